@@ -1,0 +1,198 @@
+import * as z from 'zod/mini';
+
+/**
+ * The saved flow net: what the desk edits, the server keeps and the computation reads.
+ *
+ * A document is a map of entities keyed by id, each with a version of its own, so that two people can work on
+ * different lines at once. Nothing derived is stored here: parameters of the calibration, heads by order and
+ * results are recomputed from these entries. Traces are in pixels of the sheet's base raster (origin at the
+ * top-left corner, x to the right, y down, pixel centres at + 0.5); elevations, never depths, are stored.
+ */
+export const FLOW_NET_FORMAT = 'tracehead/flow-net';
+export const FLOW_NET_VERSION = 1;
+
+export const entityId = z.uuid();
+/** A place on the sheet in base-raster pixels, `[x, y]`, y down. */
+export const sheetPoint = z.tuple([z.number(), z.number()]);
+export type SheetPoint = z.infer<typeof sheetPoint>;
+
+export const unitSystem = z.enum(['SI', 'US']);
+export type UnitSystem = z.infer<typeof unitSystem>;
+
+const finite = z.number();
+const label = z.string().check(z.maxLength(120));
+
+/** A point whose place in the section is known: `fit` points set the scale, `check` points only show a residual. */
+export const knownPoint = z.object({
+  kind: z.literal('knownPoint'),
+  name: label,
+  at: sheetPoint,
+  /** Offset in the section in the document's length unit; null until typed. */
+  offset: z.nullable(finite),
+  /** Elevation above the document's datum in its length unit; null until typed. */
+  elevation: z.nullable(finite),
+  use: z.enum(['fit', 'check']),
+});
+
+/** How the section is set out. One for each section, shared by all its nets. */
+export const setOut = z.object({
+  kind: z.literal('setOut'),
+  /** `points`: two or more known points. `distance`: a length between the first two known points, one elevation and one offset. */
+  method: z.enum(['points', 'distance']),
+  /** For `distance`: the length between the first two known points, document length unit. */
+  distance: z.nullable(finite),
+  /** For `distance`: what is level. `line`: the line through the two points; `sheet`: the sheet's own horizontal. */
+  level: z.enum(['line', 'sheet']),
+  /** Which way offsets grow on the sheet as displayed; null = let the points decide. */
+  offsetsGrow: z.nullable(z.enum(['left', 'right'])),
+  /** Which side of the sheet is upstream, as displayed; null until said. */
+  upstream: z.nullable(z.enum(['left', 'right'])),
+  /** Which way is up on the sheet when the points leave it open: quarter turns clockwise of the sheet's own up. */
+  upQuarterTurns: z.nullable(z.union([z.literal(0), z.literal(1), z.literal(2), z.literal(3)])),
+  /** Denominator n of the scale 1:n stated on the drawing, to warn when the fit disagrees; null when none is stated. */
+  statedScale: z.nullable(finite),
+});
+
+export const lineKind = z.enum([
+  'equipotential',
+  'flowLine',
+  'phreaticLine',
+  'impervious',
+  'soilBoundary',
+  'ground',
+  'submergedFace',
+  'outflowFace',
+  'drain',
+]);
+export type LineKind = z.infer<typeof lineKind>;
+
+/**
+ * A traced polyline. Which fields matter depends on `line`:
+ * - `equipotential`: `drops` (typed count of drops lost from the headwater) or `head` (typed elevation of its
+ *   head) override the count by order; both null = counted.
+ * - `submergedFace`: `water` says whose level it carries.
+ * - `drain`: `head` null = empty, carries its own elevation; a number = under pressure at that head.
+ * - `outflowFace`: water comes out freely, the head is the elevation along it.
+ */
+export const tracedLine = z.object({
+  kind: z.literal('line'),
+  line: lineKind,
+  name: label,
+  points: z.array(sheetPoint).check(z.maxLength(5000)),
+  /** False while the line is still being drawn: kept, shown, left out of every reading. */
+  finished: z.boolean(),
+  water: z.nullable(z.enum(['headwater', 'tailwater'])),
+  head: z.nullable(finite),
+  drops: z.nullable(finite),
+});
+export type TracedLine = z.infer<typeof tracedLine>;
+
+/** Where a head is wanted. A clicked point is kept on the sheet, a typed one in section coordinates. */
+export const readingPoint = z.object({
+  kind: z.literal('readingPoint'),
+  name: label,
+  place: z.discriminatedUnion('on', [
+    z.object({ on: z.literal('sheet'), at: sheetPoint }),
+    z.object({ on: z.literal('section'), offset: finite, elevation: finite }),
+  ]),
+  /** Order in the schedule, ascending. */
+  order: finite,
+});
+
+export const permeabilityUnit = z.enum(['m/s', 'cm/s', 'm/day', 'ft/s', 'ft/min', 'ft/day', 'ft/year']);
+export type PermeabilityUnit = z.infer<typeof permeabilityUnit>;
+
+/** Water levels of the load case, elevations in the document's length unit. One for each net. */
+export const waterLevels = z.object({
+  kind: z.literal('waterLevels'),
+  headwater: z.nullable(finite),
+  /** null: no tailwater; the outlets are drains or faces of free outflow. */
+  tailwater: z.nullable(finite),
+  /** Unit weight of water, kN/m³ (SI) or lb/ft³ (US). */
+  gammaW: z.number().check(z.positive()),
+  source: z.string().check(z.maxLength(500)),
+});
+
+/** Permeability with the factor (×/÷) within which it is known. One for each net. */
+export const permeability = z.object({
+  kind: z.literal('permeability'),
+  k: z.nullable(z.number().check(z.positive())),
+  unit: permeabilityUnit,
+  factor: z.nullable(z.number().check(z.minimum(1))),
+  source: z.string().check(z.maxLength(500)),
+});
+
+/** What the engineer counted on the drawing. One for each net. */
+export const netCount = z.object({
+  kind: z.literal('netCount'),
+  /** Stated number of drops Nd from headwater to outlet; null until stated. */
+  drops: z.nullable(z.number().check(z.positive())),
+  /** Stated number of channels Nf; null = counted from the traced flow lines. */
+  channels: z.nullable(z.number().check(z.positive())),
+  /** Width across the flow over length along it of the cells, B/L; 1 for squares. */
+  cellRatio: z.number().check(z.positive()),
+  /** Tracing accuracy on the sheet in pixels, for the provisional ±. */
+  tracingAccuracyPx: z.number().check(z.nonnegative()),
+  /** Accuracy of the known points on the drawing in pixels, for the provisional ±. */
+  knownPointAccuracyPx: z.number().check(z.nonnegative()),
+});
+
+export const documentEntity = z.discriminatedUnion('kind', [
+  knownPoint,
+  setOut,
+  tracedLine,
+  readingPoint,
+  waterLevels,
+  permeability,
+  netCount,
+]);
+export type DocumentEntity = z.infer<typeof documentEntity>;
+export type EntityKind = DocumentEntity['kind'];
+export type EntityOf<K extends EntityKind> = Extract<DocumentEntity, { kind: K }>;
+
+/** Kinds that belong to the section and are shared by all its nets; the others belong to one net. */
+export const SECTION_KINDS: readonly EntityKind[] = ['knownPoint', 'setOut'];
+/** Kinds of which a document holds exactly one, made by the server together with the net or section. */
+export const SINGLE_KINDS: readonly EntityKind[] = ['setOut', 'waterLevels', 'permeability', 'netCount'];
+
+export const versionedEntity = z.object({
+  id: entityId,
+  version: z.number().check(z.int(), z.positive()),
+  value: documentEntity,
+});
+export type VersionedEntity = z.infer<typeof versionedEntity>;
+
+export const flowNetDocument = z.object({
+  format: z.literal(FLOW_NET_FORMAT),
+  version: z.literal(FLOW_NET_VERSION),
+  id: entityId,
+  name: z.string().check(z.maxLength(200)),
+  unitSystem,
+  datum: z.string().check(z.maxLength(80)),
+  sheet: z.object({
+    widthPx: z.number().check(z.positive()),
+    heightPx: z.number().check(z.positive()),
+    /** Resolution of the base raster, to compare the fit with the stated scale; null when the file does not say. */
+    dpi: z.nullable(z.number().check(z.positive())),
+  }),
+  entities: z.record(entityId, versionedEntity),
+});
+export type FlowNetDocument = z.infer<typeof flowNetDocument>;
+
+/** All entities of one kind with their ids, in id order (ids are UUIDv7, so in order of making). */
+export function entitiesOf<K extends EntityKind>(
+  document: FlowNetDocument,
+  kind: K,
+): Array<{ id: string; version: number; value: EntityOf<K> }> {
+  return Object.values(document.entities)
+    .filter((entity): entity is VersionedEntity & { value: EntityOf<K> } => entity.value.kind === kind)
+    .sort((a, b) => (a.id < b.id ? -1 : 1));
+}
+
+/** The one entity of a single kind; null when the document lacks it. */
+export function singleOf<K extends EntityKind>(
+  document: FlowNetDocument,
+  kind: K,
+): { id: string; version: number; value: EntityOf<K> } | null {
+  return entitiesOf(document, kind)[0] ?? null;
+}

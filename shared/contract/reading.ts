@@ -1,0 +1,117 @@
+import * as z from 'zod/mini';
+
+/**
+ * What `readNet` returns and the schedule, the title block, the API and the command line show. Heads and
+ * elevations are in the document's length unit above its datum, pressures in kPa (SI) or lb/ft² (US), offsets in
+ * the length unit with the sign the known points gave. Figures are unrounded; `shared/text` formats them.
+ */
+
+/** Cells of the title block, so that a missing fact can lead to the step that supplies it. */
+export const titleBlockCell = z.enum([
+  'section',
+  'dam',
+  'scale',
+  'residual',
+  'headwater',
+  'outlet',
+  'drops',
+  'channels',
+  'headPerDrop',
+  'permeability',
+  'seepage',
+  'netCheck',
+]);
+export type TitleBlockCell = z.infer<typeof titleBlockCell>;
+
+/** Something missing, doubtful or contradictory, said in a sentence that tells what to do. */
+export const finding = z.object({
+  code: z.string(),
+  /** `missing` and `wrong` withhold every figure; `question` and `note` do not. */
+  weight: z.enum(['missing', 'wrong', 'question', 'note']),
+  text: z.string(),
+  cell: z.nullable(titleBlockCell),
+  /** Lines, points or known points it is about. */
+  entityIds: z.array(z.string()),
+  /** Place on the sheet, base-raster pixels; null when it has none. */
+  at: z.nullable(z.tuple([z.number(), z.number()])),
+});
+export type Finding = z.infer<typeof finding>;
+
+export const setOutReading = z.object({
+  state: z.enum(['fitted', 'incomplete', 'ambiguous', 'refused']),
+  /** Length units per pixel along the drawing; null until fitted. */
+  unitsPerPx: z.nullable(z.number()),
+  /** Angle of the section's horizontal on the sheet, degrees, clockwise positive as seen on the sheet. */
+  rotationDeg: z.nullable(z.number()),
+  /** True when offsets grow to the left as displayed. */
+  offsetsGrowLeft: z.nullable(z.boolean()),
+  /** Root mean square residual of all points when more than the fit needs are given; null = two points only. */
+  residual: z.nullable(z.number()),
+  residuals: z.array(z.object({ id: z.string(), offset: z.number(), elevation: z.number() })),
+  /** 1:n that the fit implies at the sheet's dpi; null when dpi is unknown. */
+  impliedScale: z.nullable(z.number()),
+});
+export type SetOutReading = z.infer<typeof setOutReading>;
+
+export const lineReading = z.object({
+  id: z.string(),
+  /** Drops lost from the headwater, 0 to Nd; null when it cannot be ordered. */
+  drops: z.nullable(z.number()),
+  /** Total head of the line; for faces of free outflow and empty sloping drains null (it varies along them). */
+  head: z.nullable(z.number()),
+  source: z.enum(['boundary', 'counted', 'typedDrops', 'typedHead', 'unordered']),
+});
+export type LineReading = z.infer<typeof lineReading>;
+
+export const pointReading = z.object({
+  id: z.string(),
+  name: z.string(),
+  order: z.number(),
+  /** Base-raster pixels. */
+  sheetAt: z.nullable(z.tuple([z.number(), z.number()])),
+  offset: z.nullable(z.number()),
+  elevation: z.nullable(z.number()),
+  status: z.enum(['read', 'abovePhreatic', 'withheld']),
+  /** Why there is no figure; null when there is one. */
+  reason: z.nullable(z.object({ code: z.string(), text: z.string() })),
+  dropsLost: z.nullable(z.number()),
+  /** The neighbouring lines towards the headwater and towards the outlet, and the part of the interval passed. */
+  between: z.nullable(z.object({ before: z.string(), after: z.string(), fraction: z.number() })),
+  totalHead: z.nullable(z.number()),
+  totalHeadPlusMinus: z.nullable(z.number()),
+  pressureHead: z.nullable(z.number()),
+  /** u = γw(h − z); 0 above the phreatic line (suction left out), where the heads are null. */
+  porePressure: z.nullable(z.number()),
+  porePressurePlusMinus: z.nullable(z.number()),
+  /** The count in words. */
+  explanation: z.string(),
+  findings: z.array(finding),
+});
+export type PointReading = z.infer<typeof pointReading>;
+
+export const netReading = z.object({
+  state: z.enum(['read', 'unfinished']),
+  findings: z.array(finding),
+  setOut: setOutReading,
+  lines: z.array(lineReading),
+  points: z.array(pointReading),
+  quantities: z.object({
+    /** Nd as stated or counted; null with several outlets or while unfinished. */
+    drops: z.nullable(z.number()),
+    /** What the traced lines amount to, to propose it. */
+    tracedDrops: z.nullable(z.number()),
+    channels: z.nullable(z.number()),
+    /** False when an outermost traced flow line is no real boundary: then the figure is "traced channels only". */
+    channelsComplete: z.boolean(),
+    headLost: z.nullable(z.number()),
+    /** Single head per drop; null when the intervals are unequal. */
+    headPerDrop: z.nullable(z.number()),
+    unequalIntervals: z.boolean(),
+    /** q = k·Δh·Nf·(B/L), m³/s per metre (SI) or ft³/s per foot (US). */
+    seepage: z.nullable(z.number()),
+    /** Significant figures that k deserves. */
+    seepageFigures: z.number(),
+    gammaW: z.nullable(z.number()),
+  }),
+});
+export type NetReading = z.infer<typeof netReading>;
