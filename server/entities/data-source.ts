@@ -1,0 +1,58 @@
+import 'reflect-metadata';
+import { DataSource } from 'typeorm';
+import { migrations } from '#server/migrations/index.ts';
+import { DamEntity, EventEntity, MembershipEntity } from './dam-entity.ts';
+import { DrawingEntity, RenderJobEntity, SheetEntity } from './drawing-entity.ts';
+import { ArtifactEntity, DecisionEntity, RevisionEntity } from './ledger-entity.ts';
+import { OutboxMailEntity } from './mail-entity.ts';
+import { SnakeNamingStrategy } from './naming-strategy.ts';
+import { CommandBatchEntity, DocumentEntityRow, NetEntity, SectionEntity } from './net-entity.ts';
+import { NoteEntity, NoteEntryEntity } from './note-entity.ts';
+import { PersonEntity, PersonTokenEntity, SessionEntity } from './person-entity.ts';
+
+export const entities = [
+  PersonEntity,
+  PersonTokenEntity,
+  SessionEntity,
+  DamEntity,
+  MembershipEntity,
+  EventEntity,
+  DrawingEntity,
+  SheetEntity,
+  RenderJobEntity,
+  SectionEntity,
+  NetEntity,
+  DocumentEntityRow,
+  CommandBatchEntity,
+  NoteEntity,
+  NoteEntryEntity,
+  RevisionEntity,
+  DecisionEntity,
+  ArtifactEntity,
+  OutboxMailEntity,
+];
+
+export interface DataSourceOptions {
+  url: string;
+  /** Role taken at the start of each connection, for a database where one login serves both purposes. */
+  role?: string;
+  poolSize?: number;
+}
+
+/**
+ * A data source that is not yet connected. Migrations run as the owner, the application connects as the role
+ * `tracehead_app`, which cannot change or empty the ledger.
+ */
+export function createDataSource({ url, role, poolSize = 10 }: DataSourceOptions): DataSource {
+  return new DataSource({
+    type: 'postgres',
+    url,
+    entities,
+    migrations,
+    migrationsTableName: 'migration',
+    namingStrategy: new SnakeNamingStrategy(),
+    synchronize: false,
+    poolSize,
+    extra: role ? { options: `-c role=${role}` } : {},
+  });
+}

@@ -1,0 +1,41 @@
+import { Check, Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
+
+/** Someone who signs in. Without a password hash the person is invited and has not accepted yet. */
+@Entity('person')
+@Index('uq_person_email', ['email'], { unique: true })
+@Check('ck_person_email_lower', 'email = lower(email)')
+export class PersonEntity {
+  @PrimaryColumn('uuid') id!: string;
+  @Column('text') email!: string;
+  @Column('text') name!: string;
+  @Column('text', { nullable: true }) passwordHash!: string | null;
+  @Column('boolean', { default: false }) admin!: boolean;
+  @Column('timestamptz', { nullable: true }) deactivatedAt!: Date | null;
+  @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
+}
+
+/** A single-use token of an invitation or a password reset; only its SHA-256 is kept. */
+@Entity('person_token')
+@Index('uq_person_token_hash', ['tokenHash'], { unique: true })
+@Check('ck_person_token_purpose', `purpose IN ('invitation', 'reset')`)
+export class PersonTokenEntity {
+  @PrimaryColumn('uuid') id!: string;
+  @ForeignKey(() => PersonEntity) @Index('ix_person_token_person_id') @Column('uuid') personId!: string;
+  @Column('text') purpose!: 'invitation' | 'reset';
+  @Column('text') tokenHash!: string;
+  /** The dam the invitation was written for, to name it on the page; null for others. */
+  @Column('uuid', { nullable: true }) damId!: string | null;
+  @ForeignKey(() => PersonEntity) @Column('uuid', { nullable: true }) issuedBy!: string | null;
+  @Column('timestamptz') expiresAt!: Date;
+  @Column('timestamptz', { nullable: true }) usedAt!: Date | null;
+  @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
+}
+
+/** Sessions as connect-pg-simple keeps them. */
+@Entity('session')
+@Index('ix_session_expire', ['expire'])
+export class SessionEntity {
+  @PrimaryColumn('varchar') sid!: string;
+  @Column('json') sess!: unknown;
+  @Column('timestamp', { precision: 6 }) expire!: Date;
+}

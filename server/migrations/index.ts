@@ -1,0 +1,20 @@
+import { People1796126400001 } from './1796126400001-people.ts';
+import { DamsAndEvents1796126400002 } from './1796126400002-dams-and-events.ts';
+import { Drawings1796126400003 } from './1796126400003-drawings.ts';
+import { Nets1796126400004 } from './1796126400004-nets.ts';
+import { Notes1796126400005 } from './1796126400005-notes.ts';
+import { Ledger1796126400006 } from './1796126400006-ledger.ts';
+import { OutboxMail1796126400007 } from './1796126400007-outbox-mail.ts';
+import { ApplicationRole1796126400008 } from './1796126400008-application-role.ts';
+
+/** In the order they run. */
+export const migrations = [
+  People1796126400001,
+  DamsAndEvents1796126400002,
+  Drawings1796126400003,
+  Nets1796126400004,
+  Notes1796126400005,
+  Ledger1796126400006,
+  OutboxMail1796126400007,
+  ApplicationRole1796126400008,
+];

@@ -1,0 +1,4 @@
+import type { RouteRecord } from '#server/http/route-record.ts';
+
+/** Every route of the API. A record cannot be made without an access rule. */
+export const routes: readonly RouteRecord[] = [];

@@ -1,0 +1,15 @@
+import * as z from 'zod/mini';
+import { id } from './common.ts';
+
+/**
+ * Events of `GET /live` (server-sent events, one stream for each browser). They carry ids only; the reader
+ * fetches what it shows. `number` is the net's change counter for `net` events.
+ */
+export const liveEvent = z.discriminatedUnion('type', [
+  z.object({ type: z.literal('net'), damId: id, netId: id, number: z.number(), clientId: z.nullable(id) }),
+  z.object({ type: z.literal('notes'), damId: id, netId: id }),
+  z.object({ type: z.literal('revisions'), damId: id, netId: id }),
+  z.object({ type: z.literal('drawing'), damId: id, drawingId: id }),
+  z.object({ type: z.literal('dam'), damId: id }),
+]);
+export type LiveEvent = z.infer<typeof liveEvent>;
