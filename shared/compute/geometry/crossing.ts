@@ -1,0 +1,81 @@
+import { boxesMeet, type Polyline, vertexOf } from '#shared/compute/geometry/polyline.ts';
+import { type Pair, segmentsMeet } from '#shared/compute/geometry/predicates.ts';
+
+/** Where two polylines meet: the distance along each, and the place. */
+export type Crossing = { readonly s: number; readonly t: number; readonly at: Pair };
+
+/**
+ * All places where two polylines cross or touch, in order along the first. Same frame. Whether two segments meet is
+ * decided exactly; the place is rounded. A place shared by neighbouring segments is given once. Segments that run
+ * along one another give one place, the middle of the overlap being close enough for every use made of it.
+ */
+export function crossingsOf(first: Polyline, second: Polyline): Crossing[] {
+  if (!boxesMeet(first.box, second.box)) return [];
+  const found: Crossing[] = [];
+  for (let i = 0; i + 1 < first.cum.length; i += 1) {
+    const [ax, ay] = vertexOf(first, i);
+    const [bx, by] = vertexOf(first, i + 1);
+    const box = {
+      minX: Math.min(ax, bx),
+      maxX: Math.max(ax, bx),
+      minY: Math.min(ay, by),
+      maxY: Math.max(ay, by),
+    };
+    if (!boxesMeet(box, second.box)) continue;
+    for (let j = 0; j + 1 < second.cum.length; j += 1) {
+      const cx = second.xy[2 * j]!;
+      const cy = second.xy[2 * j + 1]!;
+      const dx = second.xy[2 * j + 2]!;
+      const dy = second.xy[2 * j + 3]!;
+      if (Math.max(cx, dx) < box.minX || Math.min(cx, dx) > box.maxX) continue;
+      if (Math.max(cy, dy) < box.minY || Math.min(cy, dy) > box.maxY) continue;
+      if (!segmentsMeet(ax, ay, bx, by, cx, cy, dx, dy)) continue;
+      const [t, u] = parametersOf(ax, ay, bx, by, cx, cy, dx, dy);
+      found.push({
+        s: first.cum[i]! + t * (first.cum[i + 1]! - first.cum[i]!),
+        t: second.cum[j]! + u * (second.cum[j + 1]! - second.cum[j]!),
+        at: [ax + t * (bx - ax), ay + t * (by - ay)],
+      });
+    }
+  }
+  found.sort((a, b) => a.s - b.s);
+  return found.filter((crossing, i) => i === 0 || !sameCrossing(crossing, found[i - 1]!));
+}
+
+function sameCrossing(a: Crossing, b: Crossing): boolean {
+  const scale = 1e-9 * (1 + Math.abs(a.s) + Math.abs(a.t));
+  return Math.abs(a.s - b.s) <= scale && Math.abs(a.t - b.t) <= scale;
+}
+
+/** Parts of the two segments, each 0 to 1, at which they meet; for parallel ones the middle of what they share. */
+function parametersOf(
+  ax: number,
+  ay: number,
+  bx: number,
+  by: number,
+  cx: number,
+  cy: number,
+  dx: number,
+  dy: number,
+): [number, number] {
+  const rx = bx - ax;
+  const ry = by - ay;
+  const qx = dx - cx;
+  const qy = dy - cy;
+  const cross = rx * qy - ry * qx;
+  if (cross !== 0) {
+    const t = ((cx - ax) * qy - (cy - ay) * qx) / cross;
+    const u = ((cx - ax) * ry - (cy - ay) * rx) / cross;
+    if (Number.isFinite(t) && Number.isFinite(u)) return [held(t), held(u)];
+  }
+  const square = rx * rx + ry * ry;
+  const tc = held(((cx - ax) * rx + (cy - ay) * ry) / square);
+  const td = held(((dx - ax) * rx + (dy - ay) * ry) / square);
+  const t = (tc + td) / 2;
+  const along = ((ax + t * rx - cx) * qx + (ay + t * ry - cy) * qy) / (qx * qx + qy * qy);
+  return [t, held(along)];
+}
+
+function held(value: number): number {
+  return Math.min(1, Math.max(0, value));
+}

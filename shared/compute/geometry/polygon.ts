@@ -1,0 +1,86 @@
+import { type Box, boxesMeet } from '#shared/compute/geometry/polyline.ts';
+import { orientation, type Pair } from '#shared/compute/geometry/predicates.ts';
+
+/** A closed ring. `xy`: vertices, flat, length 2·n, x0 y0 x1 y1 …, the first not repeated, n ≥ 3. */
+export type Ring = { readonly xy: Float64Array; readonly box: Box };
+
+/** A ring through points, consecutive repeats and the closing repeat left out; null with fewer than three left. */
+export function ringOf(points: readonly Pair[]): Ring | null {
+  const kept: Pair[] = [];
+  for (const point of points) {
+    const before = kept[kept.length - 1];
+    if (before === undefined || before[0] !== point[0] || before[1] !== point[1]) kept.push(point);
+  }
+  while (kept.length > 1 && same(kept[0]!, kept[kept.length - 1]!)) kept.pop();
+  if (kept.length < 3) return null;
+  const xs = kept.map((point) => point[0]);
+  const ys = kept.map((point) => point[1]);
+  return {
+    xy: Float64Array.from(kept.flat()),
+    box: { minX: Math.min(...xs), minY: Math.min(...ys), maxX: Math.max(...xs), maxY: Math.max(...ys) },
+  };
+}
+
+function same(a: Pair, b: Pair): boolean {
+  return a[0] === b[0] && a[1] === b[1];
+}
+
+/**
+ * Signed area of a ring in squared units of its frame; positive when counter-clockwise in axes with y up (so
+ * clockwise on a sheet, where y runs down). 0 for collinear points. Shoelace about the first vertex, to avoid
+ * cancellation far from the origin.
+ */
+export function signedArea(ring: Ring): number {
+  const { xy } = ring;
+  const x0 = xy[0]!;
+  const y0 = xy[1]!;
+  let twice = 0;
+  for (let i = 2; i + 3 < xy.length; i += 2) {
+    twice += (xy[i]! - x0) * (xy[i + 3]! - y0) - (xy[i + 2]! - x0) * (xy[i + 1]! - y0);
+  }
+  return twice / 2;
+}
+
+/**
+ * True when a point lies in a ring or exactly on it; same frame. Even-odd rule with exact side tests, so that a
+ * point on a shared edge is never missed by both neighbours.
+ */
+export function ringContains(ring: Ring, x: number, y: number): boolean {
+  if (!boxesMeet(ring.box, { minX: x, maxX: x, minY: y, maxY: y })) return false;
+  const { xy } = ring;
+  const n = xy.length / 2;
+  let inside = false;
+  for (let i = 0, j = n - 1; i < n; j = i, i += 1) {
+    const ax = xy[2 * j]!;
+    const ay = xy[2 * j + 1]!;
+    const bx = xy[2 * i]!;
+    const by = xy[2 * i + 1]!;
+    if (ay > y !== by > y) {
+      const side = orientation(ax, ay, bx, by, x, y);
+      if (side === 0) return true;
+      if (side > 0 === by > ay) inside = !inside;
+    } else if (ay === y && by === y && x >= Math.min(ax, bx) && x <= Math.max(ax, bx)) {
+      return true;
+    } else if (bx === x && by === y) {
+      return true;
+    }
+  }
+  return inside;
+}
+
+/** Distance from a point to the outline of a ring, same frame; 0 on it. */
+export function distanceToRing(ring: Ring, x: number, y: number): number {
+  const { xy } = ring;
+  const n = xy.length / 2;
+  let best = Number.POSITIVE_INFINITY;
+  for (let i = 0, j = n - 1; i < n; j = i, i += 1) {
+    const ax = xy[2 * j]!;
+    const ay = xy[2 * j + 1]!;
+    const dx = xy[2 * i]! - ax;
+    const dy = xy[2 * i + 1]! - ay;
+    const square = dx * dx + dy * dy;
+    const t = square > 0 ? Math.min(1, Math.max(0, ((x - ax) * dx + (y - ay) * dy) / square)) : 0;
+    best = Math.min(best, Math.hypot(ax + t * dx - x, ay + t * dy - y));
+  }
+  return best;
+}

@@ -1,0 +1,46 @@
+import { makeFinding } from '#shared/compute/findings.ts';
+import type { SetOutFit } from '#shared/compute/set-out.ts';
+import { type Similarity, similarityRotation } from '#shared/compute/similarity.ts';
+import type { EntityOf } from '#shared/contract/document.ts';
+
+/** A fit whose up departs from the displayed up by more than this, in radians, does not look upright. */
+export const UPRIGHT_LIMIT = Math.PI / 3;
+
+/**
+ * Angle between the section's up and the way that is up on the sheet, radians from 0 to π. The way that is up is
+ * the sheet's own up turned clockwise by the stated quarter turns; none stated counts as none.
+ */
+export function departureFromUp(fit: Similarity, setOut: EntityOf<'setOut'>): number {
+  return Math.abs(wrapped(similarityRotation(fit) - ((setOut.upQuarterTurns ?? 0) * Math.PI) / 2));
+}
+
+/** An angle in radians brought into (−π, π]. */
+export function wrapped(angle: number): number {
+  return Math.atan2(Math.sin(angle), Math.cos(angle));
+}
+
+/** The answer that asks which way is up on the sheet. */
+export function askUp(): SetOutFit {
+  return {
+    state: 'ambiguous',
+    finding: makeFinding(
+      'missing',
+      'upUnknown',
+      'The sheet seems to lie on its side. Say which way is up on it.',
+      { cell: 'scale' },
+    ),
+  };
+}
+
+/** The answer that asks to which side offsets grow. */
+export function askOffsets(): SetOutFit {
+  return {
+    state: 'ambiguous',
+    finding: makeFinding(
+      'missing',
+      'offsetsSideUnknown',
+      'The line through the known points is too steep to tell the side. Say whether offsets grow to the left or to the right.',
+      { cell: 'scale' },
+    ),
+  };
+}

@@ -1,0 +1,133 @@
+import { makeFinding } from '#shared/compute/findings.ts';
+import { type SectionMap, sectionMapOf } from '#shared/compute/section-map.ts';
+import { fitByDistance } from '#shared/compute/set-out-distance.ts';
+import { fitByPoints } from '#shared/compute/set-out-points.ts';
+import {
+  type Similarity,
+  similarityResidual,
+  similarityRotation,
+  similarityScale,
+} from '#shared/compute/similarity.ts';
+import { metresPerLengthUnit } from '#shared/compute/units.ts';
+import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
+import type { Finding, SetOutReading } from '#shared/contract/reading.ts';
+
+const METRES_PER_INCH = 0.0254;
+/** A stated drawing scale is questioned when the fit departs from it by more than this part. */
+const SCALE_TOLERANCE = 0.02;
+
+export type SetOut = {
+  reading: SetOutReading;
+  map: SectionMap | null;
+  similarity: Similarity | null;
+  findings: Finding[];
+};
+
+/** What a way of setting out comes to: a similarity, or the reason why there is none yet. */
+export type SetOutFit =
+  | { state: 'fitted'; similarity: Similarity; fitPoints: number }
+  | { state: 'incomplete' | 'ambiguous' | 'refused'; finding: Finding };
+
+const NOTHING: SetOutReading = {
+  state: 'incomplete',
+  unitsPerPx: null,
+  rotationDeg: null,
+  offsetsGrowLeft: null,
+  residual: null,
+  residuals: [],
+  impliedScale: null,
+};
+
+/**
+ * Sets the section of a document out from its known points: scale, rotation, handedness, residuals, and the map
+ * between sheet and section.
+ *
+ * Clicks are base-raster pixels as given (y down), offsets and elevations the document's length unit; residuals are
+ * fitted minus given in that unit. The parameters are worked out afresh each time and never stored. Degenerate
+ * input is answered, not thrown: `incomplete` (too little typed), `ambiguous` (up or the side to which offsets grow
+ * has to be said), `refused` (coincident points, contradictory answers).
+ */
+export function readSetOut(document: FlowNetDocument): SetOut {
+  const setOut = singleOf(document, 'setOut')?.value ?? null;
+  if (setOut === null) {
+    return withoutMap(
+      'incomplete',
+      makeFinding(
+        'missing',
+        'setOutMissing',
+        'The section has not been set out. Mark two known points on the drawing.',
+        {
+          cell: 'scale',
+        },
+      ),
+    );
+  }
+  const points = entitiesOf(document, 'knownPoint');
+  const fit = setOut.method === 'points' ? fitByPoints(points, setOut) : fitByDistance(points, setOut);
+  if (fit.state !== 'fitted') return withoutMap(fit.state, fit.finding);
+  return withMap(document, fit.similarity, fit.fitPoints, setOut.statedScale);
+}
+
+function withoutMap(state: SetOutReading['state'], finding: Finding): SetOut {
+  return { reading: { ...NOTHING, state }, map: null, similarity: null, findings: [finding] };
+}
+
+function withMap(
+  document: FlowNetDocument,
+  similarity: Similarity,
+  fitPoints: number,
+  statedScale: number | null,
+): SetOut {
+  const unitsPerPx = similarityScale(similarity);
+  const { residuals, residual } = residualsOf(document, similarity, fitPoints);
+  const { dpi } = document.sheet;
+  const impliedScale =
+    dpi === null ? null : (unitsPerPx * metresPerLengthUnit(document.unitSystem) * dpi) / METRES_PER_INCH;
+  const findings = scaleFindings(impliedScale, statedScale);
+  return {
+    reading: {
+      state: 'fitted',
+      unitsPerPx,
+      rotationDeg: (similarityRotation(similarity) * 180) / Math.PI,
+      offsetsGrowLeft: similarity.mirrored,
+      residual,
+      residuals,
+      impliedScale,
+    },
+    map: sectionMapOf(similarity),
+    similarity,
+    findings,
+  };
+}
+
+function residualsOf(document: FlowNetDocument, similarity: Similarity, fitPoints: number) {
+  const residuals: SetOutReading['residuals'] = [];
+  let square = 0;
+  let counted = 0;
+  for (const { id, value } of entitiesOf(document, 'knownPoint')) {
+    if (value.offset === null || value.elevation === null) continue;
+    const [offset, elevation] = similarityResidual(similarity, {
+      sheet: value.at,
+      section: [value.offset, value.elevation],
+    });
+    residuals.push({ id, offset, elevation });
+    // Two points are met exactly by their own fit: counting them would only make the checks look better.
+    if (value.use === 'fit' && fitPoints <= 2) continue;
+    square += offset * offset + elevation * elevation;
+    counted += 1;
+  }
+  return { residuals, residual: counted === 0 ? null : Math.sqrt(square / counted) };
+}
+
+function scaleFindings(impliedScale: number | null, statedScale: number | null): Finding[] {
+  if (impliedScale === null || statedScale === null || !(statedScale > 0)) return [];
+  if (Math.abs(impliedScale / statedScale - 1) <= SCALE_TOLERANCE) return [];
+  return [
+    makeFinding(
+      'question',
+      'scaleDisagrees',
+      `The known points make the scale 1:${impliedScale.toPrecision(3)}, the drawing states 1:${statedScale}. Check the typed values, the dpi of the scan and whether the print was reduced.`,
+      { cell: 'scale' },
+    ),
+  ];
+}
