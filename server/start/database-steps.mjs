@@ -1,0 +1,78 @@
+import { existsSync, readdirSync } from 'node:fs';
+import path from 'node:path';
+import { faults, say } from './messages.mjs';
+import { startFiles } from './paths.mjs';
+import { databaseUrls, startCluster } from './postgres-cluster.mjs';
+import { migrationsDone } from './postgres-roles.mjs';
+import { lastLines, runCommand } from './run-command.mjs';
+
+/**
+ * @typedef {object} OpenDatabase
+ * @property {NodeJS.ProcessEnv} ownerEnv for scripts that change the schema
+ * @property {NodeJS.ProcessEnv} appEnv for the server, which does not get the owner's password
+ * @property {import('./postgres-cluster.mjs').RunningCluster | null} cluster null when DATABASE_URL was given
+ */
+
+/**
+ * The database named in DATABASE_URL, or else the project's own cluster, started.
+ * @param {string} storageDir
+ * @param {NodeJS.ProcessEnv} env
+ * @returns {Promise<OpenDatabase>}
+ */
+export async function openDatabase(storageDir, env) {
+  /** @type {NodeJS.ProcessEnv} */
+  const common = { ...env, STORAGE_DIR: storageDir };
+  if (env.DATABASE_URL) return { ownerEnv: common, appEnv: common, cluster: null };
+  const cluster = await startCluster(storageDir);
+  const urls = databaseUrls(cluster);
+  if (env.NODE_ENV !== 'production' && !env.SESSION_SECRET) {
+    common.SESSION_SECRET = cluster.secrets.sessionSecret;
+  }
+  return {
+    ownerEnv: { ...common, DATABASE_URL: urls.owner, DATABASE_APP_URL: urls.app },
+    appEnv: { ...common, DATABASE_APP_URL: urls.app },
+    cluster,
+  };
+}
+
+/**
+ * Runs what is pending, and fills an empty database with the demo, except in production.
+ * @param {string} root
+ * @param {string} storageDir
+ * @param {OpenDatabase} database
+ */
+export async function prepareDatabase(root, storageDir, database) {
+  if (await isMigrationPending(root, database.cluster)) {
+    await runScript(root, 'migrate', 'brought up to date', database.ownerEnv);
+  }
+  const isProduction = database.ownerEnv.NODE_ENV === 'production';
+  if (isProduction || existsSync(startFiles(storageDir).demoSignIns)) return;
+  say('Looking whether the database is empty, and drawing the demo if so.');
+  await runScript(root, 'seed', 'filled with the demo', database.ownerEnv);
+}
+
+/**
+ * Asked with psql, because loading the whole data layer only to hear "nothing to do" takes a second of each start.
+ * @param {string} root
+ * @param {import('./postgres-cluster.mjs').RunningCluster | null} cluster
+ */
+async function isMigrationPending(root, cluster) {
+  if (!cluster) return true;
+  const done = await migrationsDone(cluster.binDir, cluster.port, cluster.secrets.ownerPassword);
+  return migrationTimestamps(root).some((timestamp) => !done.includes(timestamp));
+}
+
+/** @param {string} root */
+function migrationTimestamps(root) {
+  return readdirSync(path.join(root, 'server', 'migrations')).flatMap((name) => {
+    const match = /^(\d{13})-/.exec(name);
+    return match?.[1] ? [match[1]] : [];
+  });
+}
+
+/** @param {string} root @param {string} name @param {string} outcome @param {NodeJS.ProcessEnv} env */
+async function runScript(root, name, outcome, env) {
+  const args = ['--import', 'tsx', path.join(root, 'server', 'scripts', `${name}.ts`)];
+  const script = await runCommand(process.execPath, args, { cwd: root, env });
+  if (script.code !== 0) throw faults.databaseStepFailed(outcome, lastLines(script.output, 3));
+}

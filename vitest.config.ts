@@ -1,0 +1,39 @@
+import { defineConfig } from 'vitest/config';
+
+/** Tests that need a database say so in their name or lie in a folder whose tests all do. */
+const WITH_DATABASE = ['tests/api/**/*.test.ts', 'tests/contract/**/*.test.ts', 'tests/**/*.db.test.ts'];
+const BROWSER = ['tests/e2e/**/*.test.ts'];
+
+export default defineConfig({
+  test: {
+    // A start of PostgreSQL or the first load of a big package on a busy machine takes longer than the usual 5 s.
+    testTimeout: 30_000,
+    hookTimeout: 120_000,
+    maxWorkers: 2,
+    projects: [
+      {
+        extends: true,
+        test: {
+          name: 'unit',
+          include: ['tests/**/*.test.{ts,tsx}'],
+          exclude: [...WITH_DATABASE, ...BROWSER],
+        },
+      },
+      {
+        extends: true,
+        test: { name: 'api', include: WITH_DATABASE, globalSetup: ['tests/support/cluster.ts'] },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'e2e',
+          include: BROWSER,
+          globalSetup: ['tests/support/cluster.ts', 'tests/support/built-client.ts'],
+          // One browser and one server at a time: on two cores a second pair only makes both slow.
+          fileParallelism: false,
+          testTimeout: 120_000,
+        },
+      },
+    ],
+  },
+});
