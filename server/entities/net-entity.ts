@@ -27,6 +27,8 @@ export class NetEntity {
   @Column('text') unitSystem!: UnitSystem;
   /** Incremented under the row's lock by every change; it numbers live events without gaps. */
   @Column('bigint', { default: 0 }) changeNumber!: string;
+  /** The net this one is a copy of: who drew that one drew this one too. */
+  @ForeignKey(() => NetEntity) @Column('uuid', { nullable: true }) copiedFrom!: string | null;
   @ForeignKey(() => PersonEntity) @Column('uuid') createdBy!: string;
   @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
   @Column('timestamptz', { default: () => 'now()' }) updatedAt!: Date;

@@ -6,6 +6,7 @@ import { Notes1796126400005 } from './1796126400005-notes.ts';
 import { Ledger1796126400006 } from './1796126400006-ledger.ts';
 import { OutboxMail1796126400007 } from './1796126400007-outbox-mail.ts';
 import { ApplicationRole1796126400008 } from './1796126400008-application-role.ts';
+import { NetCopiedFrom1796126400009 } from './1796126400009-net-copied-from.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -17,4 +18,5 @@ export const migrations = [
   Ledger1796126400006,
   OutboxMail1796126400007,
   ApplicationRole1796126400008,
+  NetCopiedFrom1796126400009,
 ];

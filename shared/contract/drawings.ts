@@ -54,6 +54,8 @@ export const netSummary = z.object({
   /** Derived from the ledger: never sent, waiting for a reviewer, accepted, returned. */
   state: z.enum(['draft', 'sent', 'accepted', 'returned']),
   revisionLabel: z.nullable(z.string()),
+  /** True when lines, points or levels were changed after the newest revision was frozen. */
+  changedSinceRevision: z.optional(z.boolean()),
   reviewer: z.nullable(personRef),
   archivedAt: z.nullable(timestamp),
 });

@@ -42,6 +42,8 @@ export const revisionPayload = z.object({
   engineVersion: z.string(),
   drawnBy: z.array(personRef),
   sentBy: personRef,
+  /** Whom it was sent to for checking. */
+  reviewer: personRef,
   sentAt: timestamp,
   message: z.string(),
   /** Hash of the revision before it in the same net; null for the first. */
