@@ -34,6 +34,10 @@ export const faults = {
     new StartFault(
       `${problem} Install it (Debian and Ubuntu: sudo apt-get install postgresql), or name an existing database in DATABASE_URL.`,
     ),
+  chromiumMissing: () =>
+    new StartFault(
+      'The browser tests need Chromium, which was not found. Install it (Debian: sudo apt-get install chromium), or name the program in CHROMIUM_PATH.',
+    ),
   /** @param {string} packageName @param {string} why */
   aptFailed: (packageName, why) =>
     new StartFault(
