@@ -39,7 +39,7 @@ export function isStartProcess(pid) {
     if (errorCode(error) !== 'EPERM') return false;
   }
   try {
-    return /server\/start\/\w[\w-]*\.mjs/.test(readFileSync(`/proc/${pid}/cmdline`, 'utf8'));
+    return /server\/start\/(start|dev|with-database)\.mjs/.test(readFileSync(`/proc/${pid}/cmdline`, 'utf8'));
   } catch {
     // Systems without /proc: a living process is all there is to go by.
     return process.platform !== 'linux';
