@@ -1,4 +1,4 @@
-import type { EntityManager } from 'typeorm';
+import type { EntityManager, QueryDeepPartialEntity } from 'typeorm';
 import { v7 as uuidv7 } from 'uuid';
 import { EventEntity } from '#server/entities/dam-entity.ts';
 
@@ -17,7 +17,7 @@ export interface EventInput {
 
 /** Writes who did what, in the transaction of the change itself. */
 export async function writeEvent(manager: EntityManager, event: EventInput): Promise<void> {
-  await manager.insert(EventEntity, {
+  const row: Partial<EventEntity> = {
     id: uuidv7(),
     damId: event.damId,
     drawingId: event.drawingId ?? null,
@@ -26,5 +26,7 @@ export async function writeEvent(manager: EntityManager, event: EventInput): Pro
     type: event.type,
     text: event.text,
     detail: event.detail ?? {},
-  });
+  };
+  // TypeORM's partial type cannot say "any JSON object".
+  await manager.insert(EventEntity, row as QueryDeepPartialEntity<EventEntity>);
 }
