@@ -1,0 +1,30 @@
+/** Addresses of the pages, in one place. */
+export const paths = {
+  dams: '/',
+  newDam: '/dams/new',
+  dam: (damId: string) => `/dams/${damId}`,
+  damSettings: (damId: string) => `/dams/${damId}/settings`,
+  damActivity: (damId: string) => `/dams/${damId}/activity`,
+  drawing: (drawingId: string, pageNumber?: number) =>
+    pageNumber === undefined ? `/drawings/${drawingId}` : `/drawings/${drawingId}?sheet=${pageNumber}`,
+  net: (netId: string) => `/nets/${netId}`,
+  revision: (revisionId: string) => `/revisions/${revisionId}`,
+  people: '/people',
+  mails: '/mails',
+  mail: (mailId: string) => `/mails/${mailId}`,
+  account: '/account',
+  signIn: '/sign-in',
+  forgotPassword: '/forgot-password',
+} as const;
+
+/** Sign-in that comes back to where it was asked for. */
+export function signInAndBack(from: { pathname: string; search: string; hash: string }): string {
+  const here = `${from.pathname}${from.search}${from.hash}`;
+  return here === paths.dams ? paths.signIn : `${paths.signIn}?next=${encodeURIComponent(here)}`;
+}
+
+/** The page to go to after signing in: an address within this site only, never one of another host. */
+export function safeNext(next: string | null): string {
+  if (next === null || !/^\/(?![/\\])/.test(next)) return paths.dams;
+  return next.startsWith(paths.signIn) ? paths.dams : next;
+}

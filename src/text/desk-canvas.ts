@@ -1,0 +1,13 @@
+/** Words of the desk's model: what is said when a step cannot be taken, and how steps taken back are named. */
+export const deskCanvasText = {
+  readOnly: 'This net can be looked at but not changed here.',
+  inConflict:
+    'Someone else changed this meanwhile. Compare the two versions and choose one before you change it again.',
+  nothingToUndo: 'There is nothing to take back.',
+  nothingToRedo: 'There is nothing to do again.',
+  changedSince: (label: string) =>
+    `Cannot take back “${label}”: it was changed by someone else since. The step before it can be taken back next.`,
+  undone: (label: string) => `Took back: ${label}`,
+  redone: (label: string) => `Did again: ${label}`,
+  keptMine: 'Put my version on top',
+} as const;

@@ -1,0 +1,19 @@
+export const problemText = {
+  noConnectionTitle: 'No connection',
+  noConnection:
+    'The server could not be reached. Check the connection and try again; what you typed is still here.',
+  unknownReplyTitle: 'The page is out of date',
+  unknownReply:
+    'The server answered in a way this page does not know. Reload the page; if it happens again, tell the administrator.',
+  unreadableReply: 'The server could not do this. Try again; if it happens again, tell the administrator.',
+  requestNumber: 'Request number',
+  pageFailedTitle: 'This page could not be shown',
+  pageFailed:
+    'Something in the page went wrong. Reload it; work that was not sent yet is kept in this browser.',
+  reload: 'Reload the page',
+  tryAgain: 'Try again',
+  toDams: 'Go to your dams',
+  notFoundTitle: 'Not found',
+  notFound: 'There is nothing at this address, or you have no part on the dam it belongs to.',
+  askForPart: 'Ask an engineer of the dam to give you a part on it.',
+} as const;
