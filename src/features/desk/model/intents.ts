@@ -1,0 +1,10 @@
+import type { NoteAnchor } from '#shared/contract/notes.ts';
+
+/** What the canvas asks of the panels around it: to open a form or to begin a note. */
+export type DeskIntent =
+  | { type: 'writeNote'; anchor: NoteAnchor }
+  | { type: 'openNote'; noteId: string }
+  | { type: 'openKnownPoint'; id: string }
+  | { type: 'openReadingPoint'; id: string }
+  | { type: 'openLine'; id: string }
+  | { type: 'openWaterLevels' };
