@@ -32,6 +32,8 @@ export class ApplicationRole1796126400008 implements MigrationInterface {
     await queryRunner.query(`DO $$ BEGIN
         IF NOT EXISTS (SELECT 1 FROM pg_roles WHERE rolname = 'tracehead_app') THEN
           CREATE ROLE tracehead_app NOLOGIN;
+          -- A login that is no superuser has to be a member of the role to take it on connecting.
+          EXECUTE format('GRANT tracehead_app TO %I', current_user);
         END IF;
       END $$`);
     await queryRunner.query('GRANT USAGE ON SCHEMA public TO tracehead_app');

@@ -1,0 +1,71 @@
+import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import path from 'node:path';
+import { gzipSync } from 'node:zlib';
+import { chromium } from 'playwright-core';
+import { build } from 'vite';
+import { ensureChromium } from '#server/start/chromium.mjs';
+import { projectRoot } from '#server/start/paths.mjs';
+import { type Bench, rowOf } from './bench.ts';
+import { openBenchStand } from './bench-stand.ts';
+
+/** What any page of this make costs before it shows anything of its own. */
+const BARE_PAGE = `
+  import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
+  import { createElement } from 'react';
+  import { createRoot } from 'react-dom/client';
+  import { createBrowserRouter, RouterProvider } from 'react-router-dom';
+  import * as z from 'zod/mini';
+  const title = z.parse(z.string(), 'bare');
+  const router = createBrowserRouter([{ path: '*', element: createElement('p', null, title) }]);
+  const page = createElement(RouterProvider, { router });
+  createRoot(document.body).render(createElement(QueryClientProvider, { client: new QueryClient() }, page));
+`;
+
+/** Bytes of script, gzipped, that Chromium asks for until the sign-in page rests. */
+async function scriptOfSignIn(address: string): Promise<number> {
+  const browser = await chromium.launch({ executablePath: await ensureChromium(), args: ['--no-sandbox'] });
+  const page = await browser.newPage();
+  const scripts: Promise<Buffer>[] = [];
+  page.on('response', (response) => {
+    if (response.request().resourceType() === 'script') scripts.push(response.body());
+  });
+  await page.goto(`${address}/sign-in`, { waitUntil: 'networkidle' });
+  const bodies = await Promise.all(scripts);
+  await browser.close();
+  if (bodies.length === 0) throw new Error('The sign-in page asked for no script.');
+  return gzipped(bodies);
+}
+
+async function scriptOfBarePage(): Promise<number> {
+  // Inside the project, so that the packages are found from there.
+  const folder = mkdtempSync(path.join(projectRoot, 'node_modules', '.bench-'));
+  try {
+    writeFileSync(path.join(folder, 'bare.js'), BARE_PAGE);
+    writeFileSync(path.join(folder, 'index.html'), '<script type="module" src="./bare.js"></script>');
+    const outDir = path.join(folder, 'out');
+    await build({ root: folder, configFile: false, logLevel: 'error', build: { outDir, target: 'es2022' } });
+    const assets = path.join(outDir, 'assets');
+    const scripts = readdirSync(assets).filter((name) => name.endsWith('.js'));
+    return gzipped(scripts.map((name) => readFileSync(path.join(assets, name))));
+  } finally {
+    rmSync(folder, { recursive: true, force: true });
+  }
+}
+
+const gzipped = (files: Buffer[]) =>
+  files.reduce((sum, file) => sum + gzipSync(file, { level: 9 }).length, 0);
+
+export const firstLoad: Bench = {
+  name: 'first-load',
+  about: 'gzipped script of the sign-in page, beside a bare page with the same libraries',
+  async run() {
+    const stand = await openBenchStand();
+    try {
+      const kilobytes = [(await scriptOfSignIn(stand.address)) / 1000];
+      // Sizes do not vary from run to run: one sample is all there is.
+      return [rowOf('first-load', 'kB', kilobytes, [(await scriptOfBarePage()) / 1000])];
+    } finally {
+      await stand.close();
+    }
+  },
+};
