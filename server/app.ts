@@ -1,13 +1,11 @@
-import { randomUUID } from 'node:crypto';
 import express, { type Express } from 'express';
 import helmet from 'helmet';
-import passport from 'passport';
-import { pinoHttp } from 'pino-http';
 import type { AppDeps } from './app-deps.ts';
 import { notFound } from './errors/app-error.ts';
 import { healthRouter } from './http/health.ts';
 import { mountRoutes } from './http/mount-routes.ts';
 import { problemMapper } from './http/problem-mapper.ts';
+import { requestLog } from './http/request-log.ts';
 import { serveClient } from './http/serve-client.ts';
 import { createSessionMiddleware } from './http/session.ts';
 import { configurePassport } from './http/sign-in-strategy.ts';
@@ -35,15 +33,15 @@ export function createApp(deps: AppDeps): Express {
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', 'loopback');
-  app.use(pinoHttp({ logger: deps.logger, genReqId: () => randomUUID() }));
+  app.use(requestLog(deps.logger));
   app.use((req, res, next) => {
     res.setHeader('X-Request-Id', String(req.id));
     next();
   });
   app.use(securityHeaders(deps));
   app.use(healthRouter(deps));
-  configurePassport(deps);
-  app.use('/api/v1', createSessionMiddleware(deps), passport.session(), mountRoutes(routes, deps), () => {
+  const signIns = configurePassport(deps);
+  app.use('/api/v1', createSessionMiddleware(deps), signIns.session(), mountRoutes(routes, deps), () => {
     throw notFound('There is nothing at this address.');
   });
   app.use(serveClient(deps));

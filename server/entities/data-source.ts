@@ -8,12 +8,13 @@ import { OutboxMailEntity } from './mail-entity.ts';
 import { SnakeNamingStrategy } from './naming-strategy.ts';
 import { CommandBatchEntity, DocumentEntityRow, NetEntity, SectionEntity } from './net-entity.ts';
 import { NoteEntity, NoteEntryEntity } from './note-entity.ts';
-import { PersonEntity, PersonTokenEntity, SessionEntity } from './person-entity.ts';
+import { PersonEntity, PersonTokenEntity, SessionEntity, SignInFailureEntity } from './person-entity.ts';
 
 export const entities = [
   PersonEntity,
   PersonTokenEntity,
   SessionEntity,
+  SignInFailureEntity,
   DamEntity,
   MembershipEntity,
   EventEntity,

@@ -39,3 +39,12 @@ export class SessionEntity {
   @Column('json') sess!: unknown;
   @Column('timestamp', { precision: 6 }) expire!: Date;
 }
+
+/** Points taken by wrong passwords, as rate-limiter-flexible keeps them; rows live for a quarter of an hour. */
+@Entity('sign_in_failure')
+export class SignInFailureEntity {
+  @PrimaryColumn('varchar', { length: 255 }) key!: string;
+  @Column('integer', { default: 0 }) points!: number;
+  /** Milliseconds since 1970. */
+  @Column('bigint', { nullable: true }) expire!: string | null;
+}

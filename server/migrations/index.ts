@@ -7,6 +7,8 @@ import { Ledger1796126400006 } from './1796126400006-ledger.ts';
 import { OutboxMail1796126400007 } from './1796126400007-outbox-mail.ts';
 import { ApplicationRole1796126400008 } from './1796126400008-application-role.ts';
 import { NetCopiedFrom1796126400009 } from './1796126400009-net-copied-from.ts';
+import { RevisionChangeNumber1796126400010 } from './1796126400010-revision-change-number.ts';
+import { SignInFailures1796126400011 } from './1796126400011-sign-in-failures.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -19,4 +21,6 @@ export const migrations = [
   OutboxMail1796126400007,
   ApplicationRole1796126400008,
   NetCopiedFrom1796126400009,
+  RevisionChangeNumber1796126400010,
+  SignInFailures1796126400011,
 ];

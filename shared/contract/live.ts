@@ -11,5 +11,7 @@ export const liveEvent = z.discriminatedUnion('type', [
   z.object({ type: z.literal('revisions'), damId: id, netId: id }),
   z.object({ type: z.literal('drawing'), damId: id, drawingId: id }),
   z.object({ type: z.literal('dam'), damId: id }),
+  // Told to that person only: their sign-in or their parts changed, so ask `GET /session` and the lists again.
+  z.object({ type: z.literal('person'), personId: id }),
 ]);
 export type LiveEvent = z.infer<typeof liveEvent>;
