@@ -9,7 +9,7 @@ export type LiveListener = (message: LiveMessage) => void;
 
 const NAME = 'tracehead-live';
 const REOPEN_MS = 15_000;
-const LIVE_TYPES = liveEvent.def.options.map((option) => option.shape.type.def.values[0]);
+const LIVE_TYPES = liveEvent.def.options.flatMap((option) => option.shape.type.def.values);
 
 const listeners = new Set<LiveListener>();
 let close: (() => void) | null = null;
@@ -67,7 +67,8 @@ function openStream(on: LiveListener): () => void {
     source?.close();
     source = new EventSource(apiUrl('/live'));
     source.addEventListener('hello', () => on({ type: 'hello' }));
-    for (const type of LIVE_TYPES) source.addEventListener(type, (event) => passOn(event, on));
+    for (const type of LIVE_TYPES)
+      source.addEventListener(type, (event: MessageEvent<string>) => passOn(event, on));
     source.onerror = () => {
       if (source?.readyState === EventSource.CLOSED) timer ??= setTimeout(open, REOPEN_MS);
     };
