@@ -11,6 +11,8 @@ export class RevisionEntity {
   @ForeignKey(() => NetEntity) @Column('uuid') netId!: string;
   @Column('integer') number!: number;
   @Column('text') label!: string;
+  /** The net's change number at freezing: what came later is not in the payload. */
+  @Column('bigint') changeNumber!: string;
   /** Canonical JSON (RFC 8785) of the payload; text, because jsonb would lose the sign of zero. */
   @Column('text') payload!: string;
   @Column('text') payloadHash!: string;

@@ -1,0 +1,67 @@
+import type { EntityManager } from 'typeorm';
+import { notFound } from '#server/errors/app-error.ts';
+import type { NetSummary } from '#shared/contract/drawings.ts';
+
+interface SummaryRow {
+  id: string;
+  section_id: string;
+  name: string;
+  archived_at: Date | null;
+  drops: number | null;
+  open_notes: number;
+  label: string | null;
+  reviewer_id: string | null;
+  reviewer_name: string | null;
+  decision: 'accepted' | 'returned' | null;
+  changed_since: boolean | null;
+}
+
+/** The newest revision says where a net stands; everything before it is history. */
+const SUMMARIES = `
+  SELECT n.id, n.section_id, n.name, n.archived_at,
+    (SELECT (e.value->>'drops')::float8 FROM document_entity e
+      WHERE e.owner_id = n.id AND e.kind = 'netCount' AND NOT e.removed) AS drops,
+    (SELECT count(*)::int FROM note o WHERE o.net_id = n.id AND o.state <> 'closed') AS open_notes,
+    r.label, r.reviewer_id, p.name AS reviewer_name, n.change_number > r.change_number AS changed_since,
+    (SELECT d.decision FROM decision d WHERE d.revision_id = r.id ORDER BY d.decided_at LIMIT 1) AS decision
+  FROM net n
+  LEFT JOIN LATERAL (SELECT v.id, v.label, v.reviewer_id, v.change_number FROM revision v
+    WHERE v.net_id = n.id ORDER BY v.number DESC LIMIT 1) r ON true
+  LEFT JOIN person p ON p.id = r.reviewer_id`;
+
+function toSummary(row: SummaryRow): NetSummary {
+  const { reviewer_id: id, reviewer_name: name } = row;
+  return {
+    id: row.id,
+    name: row.name,
+    drops: row.drops,
+    openNotes: row.open_notes,
+    state: row.label === null ? 'draft' : (row.decision ?? 'sent'),
+    revisionLabel: row.label,
+    changedSinceRevision: row.changed_since ?? false,
+    reviewer: id && name !== null ? { id, name } : null,
+    archivedAt: row.archived_at?.toISOString() ?? null,
+  };
+}
+
+/** The nets of each section, in order of making. */
+export async function netSummariesBySection(
+  manager: EntityManager,
+  sectionIds: readonly string[],
+): Promise<Map<string, NetSummary[]>> {
+  const rows: SummaryRow[] = await manager.query(
+    `${SUMMARIES} WHERE n.section_id = ANY($1::uuid[]) ORDER BY n.id`,
+    [sectionIds],
+  );
+  const bySection = new Map<string, NetSummary[]>(sectionIds.map((id) => [id, []]));
+  for (const row of rows) bySection.get(row.section_id)?.push(toSummary(row));
+  return bySection;
+}
+
+/** One net as lists show it. @throws AppError not-found */
+export async function netSummaryOf(manager: EntityManager, netId: string): Promise<NetSummary> {
+  const rows: SummaryRow[] = await manager.query(`${SUMMARIES} WHERE n.id = $1`, [netId]);
+  const row = rows[0];
+  if (!row) throw notFound();
+  return toSummary(row);
+}

@@ -1,0 +1,9 @@
+import type { SheetEntity } from '#server/entities/drawing-entity.ts';
+import type { SheetDto } from '#shared/contract/drawings.ts';
+
+/** A sheet as the client sees it. */
+export function presentSheet(sheet: SheetEntity): SheetDto {
+  const { id, pageNumber, widthPx, heightPx, dpi, note } = sheet;
+  const { rendition, tileSizePx, maxZoom, tileFormat: format } = sheet;
+  return { id, pageNumber, widthPx, heightPx, dpi, note, tiles: { rendition, tileSizePx, maxZoom, format } };
+}

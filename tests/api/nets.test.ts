@@ -1,0 +1,140 @@
+import { v7 as uuidv7 } from 'uuid';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { type EntityKind, type entitiesOf, singleOf } from '#shared/contract/document.ts';
+import { addNet, addSheet, openNet } from '#tests/support/net-fixture.ts';
+import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
+import { addDam, addMember } from '#tests/support/test-people.ts';
+
+let app: TestApp;
+beforeAll(async () => {
+  app = await createTestApp();
+});
+afterAll(() => app.close());
+
+const kindsIn = (document: Parameters<typeof entitiesOf>[0]): EntityKind[] =>
+  Object.values(document.entities)
+    .map((entity) => entity.value.kind)
+    .sort();
+
+describe('a section', () => {
+  it('refuses a frame off the sheet or without size', async () => {
+    const { caller, sheetId } = await addNet(app);
+    for (const frame of [
+      [2100, 10, 50, 50],
+      [10, 10, 0, 50],
+      [-80, 10, 60, 50],
+    ]) {
+      const input = { id: uuidv7(), name: 'C–C', chainage: '', frame };
+      const { body } = await caller.post(`/sheets/${sheetId}/sections`, input).expect(400);
+      expect(body.errors[0].path).toBe('frame');
+    }
+  });
+
+  it('refuses an id that is taken', async () => {
+    const { caller, sheetId, sectionId } = await addNet(app);
+    const input = { id: sectionId, name: 'C–C', chainage: '', frame: null };
+    const { body } = await caller.post(`/sheets/${sheetId}/sections`, input).expect(409);
+    expect(body.code).toBe('already-exists');
+  });
+
+  it('is not calibrated before known points are marked', async () => {
+    const { caller, netId } = await addNet(app);
+    const { section } = await openNet(caller, netId);
+    expect(section).toMatchObject({ name: 'B–B', chainage: '212', calibrated: false, archivedAt: null });
+  });
+
+  it('takes a new name and frame and keeps its nets', async () => {
+    const { caller, sectionId, netId } = await addNet(app);
+    const { body } = await caller
+      .patch(`/sections/${sectionId}`, { name: 'D–D', frame: [10, 20, 300, 200] })
+      .expect(200);
+    expect(body).toMatchObject({ name: 'D–D', chainage: '212', frame: [10, 20, 300, 200] });
+    expect(body.nets.map((net: { id: string }) => net.id)).toEqual([netId]);
+  });
+
+  it('refuses changes while it is put away and takes them when brought back', async () => {
+    const { caller, sectionId } = await addNet(app);
+    const away = await caller.post(`/sections/${sectionId}/archive`).expect(200);
+    expect(away.body.archivedAt).not.toBeNull();
+    const refused = await caller.patch(`/sections/${sectionId}`, { name: 'E–E' }).expect(409);
+    expect(refused.body.detail).toMatch(/section has been put away/);
+    await caller.post(`/sections/${sectionId}/nets`, { id: uuidv7(), name: 'Flood' }).expect(409);
+    const back = await caller.post(`/sections/${sectionId}/restore`).expect(200);
+    expect(back.body.archivedAt).toBeNull();
+    await caller.patch(`/sections/${sectionId}`, { name: 'E–E' }).expect(200);
+  });
+
+  it('cannot be made by a reviewer, and is not there for a stranger', async () => {
+    const { damId, sheetId } = await addNet(app);
+    const input = { id: uuidv7(), name: 'F–F', chainage: '', frame: null };
+    const reviewer = await app.signIn('Remi Okafor');
+    await addMember(app.db, damId, reviewer.person.id, 'reviewer');
+    await reviewer.caller.post(`/sheets/${sheetId}/sections`, input).expect(403);
+    const stranger = await app.signIn('Nils Brandt');
+    await stranger.caller.post(`/sheets/${sheetId}/sections`, input).expect(404);
+  });
+});
+
+describe('a net', () => {
+  it('starts with the set-out of its section and its own levels, permeability and count', async () => {
+    const { caller, netId, engineer, damId } = await addNet(app);
+    const detail = await openNet(caller, netId);
+    expect(kindsIn(detail.document)).toEqual(['netCount', 'permeability', 'setOut', 'waterLevels']);
+    expect(singleOf(detail.document, 'waterLevels')?.value).toMatchObject({ headwater: null, gammaW: 9.81 });
+    expect(detail.net).toMatchObject({ name: 'Full supply', state: 'draft', openNotes: 0, drops: null });
+    expect(detail.dam).toMatchObject({ id: damId, fullSupplyLevel: 118 });
+    expect(detail).toMatchObject({ changeNumber: 0, revisionCount: 0 });
+    expect(detail.drawnBy).toEqual([{ id: engineer.id, name: engineer.name }]);
+    expect(detail.can).toContain('net.send');
+  });
+
+  it("is in the dam's own units with its unit weight of water", async () => {
+    const { person, caller } = await app.signIn('Iris Marsh');
+    const damId = await addDam(app.db, person.id, { unitSystem: 'US' });
+    await addMember(app.db, damId, person.id, 'engineer');
+    const sheetId = await addSheet(app, damId, person.id);
+    const sectionId = uuidv7();
+    const netId = uuidv7();
+    await caller
+      .post(`/sheets/${sheetId}/sections`, { id: sectionId, name: 'A–A', chainage: '', frame: null })
+      .expect(201);
+    await caller.post(`/sections/${sectionId}/nets`, { id: netId, name: 'Flood' }).expect(201);
+    const { document } = await openNet(caller, netId);
+    expect(document.unitSystem).toBe('US');
+    expect(singleOf(document, 'waterLevels')?.value.gammaW).toBe(62.4);
+    expect(singleOf(document, 'permeability')?.value.unit).toBe('ft/day');
+  });
+
+  it('is renamed, put away and brought back, and each is told in the activity', async () => {
+    const { caller, netId } = await addNet(app);
+    const renamed = await caller.patch(`/nets/${netId}`, { name: 'Flood level' }).expect(200);
+    expect(renamed.body.name).toBe('Flood level');
+    expect((await caller.post(`/nets/${netId}/archive`).expect(200)).body.archivedAt).not.toBeNull();
+    await caller.patch(`/nets/${netId}`, { name: 'Other' }).expect(409);
+    expect((await caller.post(`/nets/${netId}/restore`).expect(200)).body.archivedAt).toBeNull();
+    const events: Array<{ type: string }> = await app.db.query(
+      'SELECT type FROM event WHERE net_id = $1 ORDER BY id',
+      [netId],
+    );
+    expect(events.map((event) => event.type)).toEqual([
+      'net.created',
+      'net.renamed',
+      'net.archived',
+      'net.restored',
+    ]);
+  });
+
+  it('that is put away twice is put away once', async () => {
+    const { caller, netId } = await addNet(app);
+    const first = await caller.post(`/nets/${netId}/archive`).expect(200);
+    const second = await caller.post(`/nets/${netId}/archive`).expect(200);
+    expect(second.body.archivedAt).toBe(first.body.archivedAt);
+  });
+
+  it('cannot be read by somebody outside the dam', async () => {
+    const { netId } = await addNet(app);
+    const { caller } = await app.signIn('Nils Brandt');
+    await caller.get(`/nets/${netId}`).expect(404);
+    await app.caller().get(`/nets/${netId}`).expect(401);
+  });
+});

@@ -1,0 +1,111 @@
+import { v7 as uuidv7 } from 'uuid';
+import { DrawingEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
+import type { DocumentEntity, EntityKind, EntityOf, FlowNetDocument } from '#shared/contract/document.ts';
+import { singleOf } from '#shared/contract/document.ts';
+import type { NetDetailDto, NetOp } from '#shared/contract/nets.ts';
+import type { Caller } from './caller.ts';
+import type { TestApp } from './test-app.ts';
+import { addDam, addMember, type TestPerson } from './test-people.ts';
+
+/** A drawing with one rendered sheet, as if it had been uploaded. */
+export async function addSheet(app: TestApp, damId: string, uploadedBy: string): Promise<string> {
+  const drawingId = uuidv7();
+  const sheetId = uuidv7();
+  await app.db.getRepository(DrawingEntity).insert({
+    id: drawingId,
+    damId,
+    uploadedBy,
+    sha256: 'a'.repeat(64),
+    fileName: 'hf-114.tif',
+    mediaType: 'image/tiff',
+    byteSize: '1000',
+    number: 'HF-114',
+    title: 'Cross-sections',
+    revision: 'C',
+  });
+  await app.db.getRepository(SheetEntity).insert({
+    id: sheetId,
+    drawingId,
+    pageNumber: 1,
+    widthPx: 2000,
+    heightPx: 1000,
+    dpi: 300,
+    rendition: 'base',
+    tileSizePx: 512,
+    maxZoom: 2,
+    tileFormat: 'png',
+  });
+  return sheetId;
+}
+
+export interface NetPlaceFixture {
+  damId: string;
+  sheetId: string;
+  sectionId: string;
+  netId: string;
+  engineer: TestPerson;
+  caller: Caller;
+}
+
+/** A dam with an engineer, a sheet, Section B–B and an empty net, made through the API. */
+export async function addNet(app: TestApp, engineerName = 'Iris Marsh'): Promise<NetPlaceFixture> {
+  const { person: engineer, caller } = await app.signIn(engineerName);
+  const damId = await addDam(app.db, engineer.id);
+  await addMember(app.db, damId, engineer.id, 'engineer');
+  const sheetId = await addSheet(app, damId, engineer.id);
+  const sectionId = uuidv7();
+  await caller
+    .post(`/sheets/${sheetId}/sections`, { id: sectionId, name: 'B–B', chainage: '212', frame: null })
+    .expect(201);
+  const netId = uuidv7();
+  await caller.post(`/sections/${sectionId}/nets`, { id: netId, name: 'Full supply' }).expect(201);
+  return { damId, sheetId, sectionId, netId, engineer, caller };
+}
+
+export async function openNet(caller: Caller, netId: string): Promise<NetDetailDto> {
+  return (await caller.get(`/nets/${netId}`).expect(200)).body;
+}
+
+export const put = (value: DocumentEntity, entityId = uuidv7(), baseVersion = 0): NetOp => ({
+  op: 'put',
+  entityId,
+  baseVersion,
+  value,
+});
+
+/** A change of the one entity of its kind, on the version the document holds. */
+export function putSingle<K extends EntityKind>(
+  document: FlowNetDocument,
+  kind: K,
+  change: Partial<EntityOf<K>>,
+): NetOp {
+  const held = singleOf(document, kind);
+  if (!held) throw new Error(`The document has no ${kind}.`);
+  return put({ ...held.value, ...change } as DocumentEntity, held.id, held.version);
+}
+
+/** One browser's numbered batches. */
+export function batchesOf(clientId = uuidv7()) {
+  let seq = 0;
+  return (ops: NetOp[], label = 'traced a line') => {
+    seq += 1;
+    return { clientId, seq, label, ops };
+  };
+}
+
+export function lineOf(
+  points: Array<[number, number]>,
+  change: Partial<EntityOf<'line'>> = {},
+): EntityOf<'line'> {
+  return {
+    kind: 'line',
+    line: 'equipotential',
+    name: '',
+    points,
+    finished: true,
+    water: null,
+    head: null,
+    drops: null,
+    ...change,
+  };
+}
