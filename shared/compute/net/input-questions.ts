@@ -1,0 +1,122 @@
+import { makeFinding } from '#shared/compute/findings.ts';
+import { sheetPx } from '#shared/compute/frames.ts';
+import type { NetLine } from '#shared/compute/net/net-lines.ts';
+import type { Potential } from '#shared/compute/net/potentials.ts';
+import type { PlacedPoint } from '#shared/compute/net/read-point.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import { permeabilityInMetresPerSecond } from '#shared/compute/units.ts';
+import type { EntityOf, UnitSystem } from '#shared/contract/document.ts';
+import type { Finding } from '#shared/contract/reading.ts';
+
+/** Soils and rocks lie within these permeabilities, m/s; what lies outside is more often a slip of the unit. */
+const LEAST_K = 1e-13;
+const GREATEST_K = 1;
+/** A point farther than this off the traced section, in metres, is more often a slip of the sign or of the figure. */
+const FAR_METRES = 100;
+const FAR_FEET = 330;
+
+/** Questions about the water levels: each is plausible by itself but not beside the others. */
+export function questionLevels(water: EntityOf<'waterLevels'>, potentials: readonly Potential[]): Finding[] {
+  const findings: Finding[] = [];
+  const { headwater, tailwater } = water;
+  if (headwater === null) return [];
+  if (tailwater !== null && headwater < tailwater) {
+    findings.push(
+      makeFinding(
+        'question',
+        'headwaterBelowTailwater',
+        'The headwater lies below the tailwater. Check both levels.',
+        {
+          cell: 'headwater',
+        },
+      ),
+    );
+  }
+  for (const potential of potentials) {
+    const { kind } = potential.line;
+    if ((kind === 'drain' || kind === 'outflowFace') && potential.outHead >= headwater) {
+      findings.push(
+        makeFinding(
+          'question',
+          'outletAboveHeadwater',
+          `The head at ${potential.label} is not below the headwater. Check the level of both.`,
+          {
+            cell: 'outlet',
+            entityIds: [potential.id],
+          },
+        ),
+      );
+    }
+  }
+  return findings;
+}
+
+/** Questions a permeability outside 10⁻¹³ to 1 m/s, whatever its unit; says when none is entered. */
+export function questionPermeability(permeability: EntityOf<'permeability'>): Finding[] {
+  if (permeability.k === null) {
+    return [
+      makeFinding('note', 'permeabilityMissing', 'Without a permeability no seepage is given.', {
+        cell: 'permeability',
+      }),
+    ];
+  }
+  const k = permeabilityInMetresPerSecond(permeability.k, permeability.unit);
+  if (k >= LEAST_K && k <= GREATEST_K) return [];
+  return [
+    makeFinding(
+      'question',
+      'permeabilityImplausible',
+      'The permeability lies outside the range of soils and rock, 1e-13 to 1 m/s. Check the figure and its unit.',
+      { cell: 'permeability' },
+    ),
+  ];
+}
+
+/**
+ * Questions a point that lies more than 100 m (330 ft) off everything that is traced, as the place of a point typed
+ * with a slip does.
+ */
+export function questionPlace(
+  point: PlacedPoint,
+  lines: readonly NetLine[],
+  map: SectionMap,
+  system: UnitSystem,
+): Finding[] {
+  const { offset, elevation } = point;
+  if (offset === null || elevation === null || lines.length === 0) return [];
+  const corners = lines.flatMap(({ shape: { box } }) =>
+    [
+      [box.minX, box.minY],
+      [box.maxX, box.minY],
+      [box.minX, box.maxY],
+      [box.maxX, box.maxY],
+    ].map(([x = 0, y = 0]) => map.toSection(sheetPx(x, y))),
+  );
+  const off = Math.hypot(
+    beyond(
+      offset,
+      corners.map((corner) => corner[0]),
+    ),
+    beyond(
+      elevation,
+      corners.map((corner) => corner[1]),
+    ),
+  );
+  const [limit, unit] = system === 'SI' ? [FAR_METRES, 'm'] : [FAR_FEET, 'ft'];
+  if (off <= limit) return [];
+  return [
+    makeFinding(
+      'question',
+      'pointFarOff',
+      `The point lies more than ${limit} ${unit} off the traced section. Check its coordinates.`,
+      {
+        entityIds: [point.id],
+        at: point.sheetAt,
+      },
+    ),
+  ];
+}
+
+function beyond(value: number, range: readonly number[]): number {
+  return Math.max(0, Math.min(...range) - value, value - Math.max(...range));
+}

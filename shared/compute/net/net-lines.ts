@@ -1,0 +1,39 @@
+import { lengthOf, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
+import {
+  entitiesOf,
+  type FlowNetDocument,
+  type LineKind,
+  type TracedLine,
+} from '#shared/contract/document.ts';
+
+/** A finished traced line with its shape in base-raster pixels. */
+export type NetLine = {
+  readonly id: string;
+  readonly kind: LineKind;
+  readonly value: TracedLine;
+  readonly shape: Polyline;
+};
+
+/**
+ * The finished lines of a document that have a length, in id order. Lines still being drawn, and lines of fewer than
+ * two distinct places, are left out.
+ */
+export function netLinesOf(document: FlowNetDocument): NetLine[] {
+  const lines: NetLine[] = [];
+  for (const { id, value } of entitiesOf(document, 'line')) {
+    const shape = value.finished ? polylineOf(value.points) : null;
+    if (shape !== null) lines.push({ id, kind: value.line, value, shape });
+  }
+  return lines;
+}
+
+/** The lines of some kinds, order kept. */
+export function linesOfKind(lines: readonly NetLine[], ...kinds: readonly LineKind[]): NetLine[] {
+  return lines.filter((line) => kinds.includes(line.kind));
+}
+
+/** Middle value of the lengths of lines in pixels; 0 when there are none. */
+export function medianLength(lines: readonly NetLine[]): number {
+  const lengths = lines.map((line) => lengthOf(line.shape)).sort((a, b) => a - b);
+  return lengths[lengths.length >> 1] ?? 0;
+}

@@ -1,0 +1,177 @@
+import { makeFinding } from '#shared/compute/findings.ts';
+import type { Polyline } from '#shared/compute/geometry/polyline.ts';
+import { type CarrierGraph, carrierGraph } from '#shared/compute/net/carrier-graph.ts';
+import { type Carrier, carryToFeet, type FootedLine } from '#shared/compute/net/feet.ts';
+import { type HeadLine, neighbourLinks } from '#shared/compute/net/neighbours.ts';
+import { checkLines } from '#shared/compute/net/net-checks.ts';
+import { linesOfKind, medianLength, type NetLine, netLinesOf } from '#shared/compute/net/net-lines.ts';
+import { type FlowOrder, orderAlongFlow } from '#shared/compute/net/order.ts';
+import { type Potential, potentialsOf } from '#shared/compute/net/potentials.ts';
+import { type Strip, type StripLine, stripBetween } from '#shared/compute/net/strips.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import { type EntityOf, entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
+import type { Finding } from '#shared/contract/reading.ts';
+
+/** A gap or overshoot at the end of an equipotential is bridged up to this part of the usual equipotential's length. */
+const REACH_PART = 0.05;
+
+export type Equipotential = { readonly id: string; readonly line: NetLine; readonly footed: FootedLine };
+
+/** The traced net put in order, before heads: everything in base-raster pixels. */
+export type NetModel = {
+  readonly lines: readonly NetLine[];
+  readonly equipotentials: readonly Equipotential[];
+  readonly potentials: readonly Potential[];
+  readonly order: FlowOrder;
+  readonly strips: readonly Strip[];
+  /** Lines that no flow crosses: impervious boundaries and the phreatic line. */
+  readonly walls: readonly NetLine[];
+  /** Greatest gap taken for a tracing error. */
+  readonly reach: number;
+  readonly findings: readonly Finding[];
+};
+
+/**
+ * Puts the traced lines of a document in order: potential boundaries, feet, neighbours, order along the flow, strips.
+ * Nothing here knows a drop or a head. `water` gives the levels at which faces are clipped; `accuracyPx` is the
+ * tracing accuracy.
+ */
+export function modelNet(
+  document: FlowNetDocument,
+  map: SectionMap,
+  water: EntityOf<'waterLevels'>,
+  accuracyPx: number,
+): NetModel {
+  const lines = netLinesOf(document);
+  const walls = linesOfKind(lines, 'impervious', 'phreaticLine');
+  const flowLines = linesOfKind(lines, 'flowLine');
+  const { all: potentials, findings } = potentialsOf(lines, map, water, accuracyPx);
+  const traced = linesOfKind(lines, 'equipotential');
+  const reach = Math.max(3 * accuracyPx, REACH_PART * medianLength(traced.length > 0 ? traced : lines));
+  const carriers = carriersOf(walls, flowLines, potentials);
+  const equipotentials = traced.map(
+    (line): Equipotential => ({ id: line.id, line, footed: carryToFeet(line.shape, carriers, reach) }),
+  );
+  const heads = headLines(equipotentials, potentials);
+  const links = neighbourLinks(heads, shapesOf(walls), shapesOf(flowLines));
+  const order = orderAlongFlow(heads, links);
+  const strips = stripsOf(order, equipotentials, potentials, carrierGraph(carriers, potentials, reach));
+  return {
+    lines,
+    equipotentials,
+    potentials,
+    order,
+    strips,
+    walls,
+    reach,
+    findings: [
+      ...findings,
+      ...unfinishedLines(document),
+      ...checkLines(equipotentials, flowLines, walls, accuracyPx, reach),
+      ...(findings.length === 0 ? orderFindings(order, equipotentials, potentials) : []),
+    ],
+  };
+}
+
+function shapesOf(lines: readonly NetLine[]): Polyline[] {
+  return lines.map((line) => line.shape);
+}
+
+/** Faces along which the head is the elevation carry feet too: equipotentials end on them. */
+function carriersOf(
+  walls: readonly NetLine[],
+  flowLines: readonly NetLine[],
+  potentials: readonly Potential[],
+): Carrier[] {
+  return [
+    ...walls.map((line) => ({ id: line.id, shape: line.shape, real: true })),
+    ...potentials
+      .filter((potential) => potential.level === null)
+      .map((potential) => ({ id: potential.id, shape: potential.shape, real: true })),
+    ...flowLines.map((line) => ({ id: line.id, shape: line.shape, real: false })),
+  ];
+}
+
+function headLines(equipotentials: readonly Equipotential[], potentials: readonly Potential[]): HeadLine[] {
+  return [
+    ...potentials.map(({ id, shape, role }): HeadLine => ({ id, shape, role })),
+    ...equipotentials.map(({ id, footed }): HeadLine => ({ id, shape: footed.shape, role: 'equipotential' })),
+  ];
+}
+
+function stripsOf(
+  order: FlowOrder,
+  equipotentials: readonly Equipotential[],
+  potentials: readonly Potential[],
+  graph: CarrierGraph,
+): Strip[] {
+  const stripLines = new Map<string, StripLine>([
+    ...equipotentials.map(({ id, footed }) => [id, { id, ...footed, isBoundary: false }] as const),
+    ...potentials.map(
+      ({ id, shape }) => [id, { id, shape, start: null, end: null, isBoundary: true }] as const,
+    ),
+  ]);
+  return order.pairs
+    .map((pair) => stripBetween(stripLines.get(pair.before)!, stripLines.get(pair.after)!, pair, graph))
+    .filter((strip) => strip !== null);
+}
+
+function unfinishedLines(document: FlowNetDocument): Finding[] {
+  return entitiesOf(document, 'line')
+    .filter(({ value }) => !value.finished)
+    .map(({ id, value }) =>
+      makeFinding('note', 'lineNotFinished', 'A line has not been finished and is left out of the reading.', {
+        entityIds: [id],
+        at: value.points[0] ?? null,
+      }),
+    );
+}
+
+function orderFindings(
+  order: FlowOrder,
+  equipotentials: readonly Equipotential[],
+  potentials: readonly Potential[],
+): Finding[] {
+  const placeOf = (id: string) => equipotentials.find((line) => line.id === id)?.line.value.points[0] ?? null;
+  const about = (code: string, text: string, ids: readonly string[]) =>
+    ids.map((id) => makeFinding('wrong', code, text, { cell: 'netCheck', entityIds: [id], at: placeOf(id) }));
+  const reached = potentials.some(
+    (potential) => potential.role === 'outlet' && order.place.has(potential.id),
+  );
+  return [
+    ...about(
+      'lineUnordered',
+      'An equipotential could not be placed in the order from the headwater to the outlet. Check where it runs and which lines lie beside it.',
+      order.unordered,
+    ),
+    ...about(
+      'flowStops',
+      'From an equipotential the flow leads on to no other line and to no outlet. Check the next line and the outlet.',
+      order.deadEnds,
+    ),
+    ...about(
+      'sideBySide',
+      'Two equipotentials follow on the same line. Trace them as one line, or say their heads.',
+      sideBySide(order),
+    ),
+    ...(reached || order.deadEnds.length > 0
+      ? []
+      : [
+          makeFinding(
+            'wrong',
+            'outletNotReached',
+            'The flow from the headwater does not reach the outlet. Check the outlet and the last equipotential.',
+            {
+              cell: 'outlet',
+            },
+          ),
+        ]),
+  ];
+}
+
+/** Equipotentials that share their place in the order with another one. */
+function sideBySide(order: FlowOrder): string[] {
+  return order.sequence.filter((id) =>
+    order.sequence.some((other) => other !== id && order.place.get(other) === order.place.get(id)),
+  );
+}

@@ -1,0 +1,197 @@
+import { makeFinding } from '#shared/compute/findings.ts';
+import { sheetPx } from '#shared/compute/frames.ts';
+import { lengthOf, type Polyline, pointAlong, vertexOf } from '#shared/compute/geometry/polyline.ts';
+import { clipAtLevel } from '#shared/compute/net/clip-at-level.ts';
+import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import type { EntityOf } from '#shared/contract/document.ts';
+import type { Finding } from '#shared/contract/reading.ts';
+
+type WaterLevels = EntityOf<'waterLevels'>;
+
+/** A boundary that carries a head of its own: where water enters the section or leaves it. */
+export type Potential = {
+  readonly id: string;
+  readonly line: NetLine;
+  readonly role: 'headwater' | 'outlet';
+  /** Wetted part in base-raster pixels. */
+  readonly shape: Polyline;
+  /** The one head along it; null where the head is the elevation and varies along the boundary. */
+  readonly level: number | null;
+  /** Head that the water has when it has left here: the level, or the lowest elevation of a face of free outflow. */
+  readonly outHead: number;
+  /** Words for it inside a sentence. */
+  readonly label: string;
+};
+
+export type Potentials = { readonly all: Potential[]; readonly findings: Finding[] };
+
+/** A free face or drain counts as level when its elevations differ by less than this part of the head above it. */
+const LEVEL_PART = 0.02;
+
+/**
+ * The potential boundaries among the traced lines, each with its own head: a submerged face the level of the water
+ * on it (clipped at the waterline where it sticks out), an empty drain and a face of free outflow the elevation
+ * along them, a drain under pressure its entered head. Heads and elevations are in the document's length unit;
+ * `accuracyPx` is the tracing accuracy in pixels, below which a difference of elevation means nothing.
+ */
+export function potentialsOf(
+  lines: readonly NetLine[],
+  map: SectionMap,
+  water: WaterLevels,
+  accuracyPx: number,
+): Potentials {
+  const all: Potential[] = [];
+  const findings: Finding[] = [];
+  const marked = linesOfKind(lines, 'submergedFace', 'drain', 'outflowFace');
+  for (const line of marked) {
+    const found =
+      line.kind === 'submergedFace'
+        ? submerged(line, map, water, accuracyPx)
+        : freeOrHeld(line, map, water.headwater, accuracyPx);
+    if ('id' in found) all.push(found);
+    else findings.push(found.finding);
+  }
+  return { all, findings: [...findings, ...missingSides(all, marked, water)] };
+}
+
+/** Elevation of a place on the sheet, base-raster pixels to document length unit. */
+export function elevationAt(map: SectionMap, x: number, y: number): number {
+  return map.toSection(sheetPx(x, y))[1];
+}
+
+/** Total head of a potential boundary at distance `s` (pixels) along its wetted shape. */
+export function headAlong(potential: Potential, map: SectionMap, s: number): number {
+  return potential.level ?? elevationAt(map, ...pointAlong(potential.shape, s));
+}
+
+function submerged(
+  line: NetLine,
+  map: SectionMap,
+  water: WaterLevels,
+  accuracyPx: number,
+): Potential | { finding: Finding } {
+  const role = line.value.water === 'tailwater' ? 'outlet' : 'headwater';
+  if (line.value.water === null) {
+    return problem(
+      line,
+      'missing',
+      'faceWithoutWater',
+      'Say whether the submerged face carries the headwater or the tailwater.',
+    );
+  }
+  const level = line.value.water === 'headwater' ? water.headwater : water.tailwater;
+  if (level === null) {
+    return problem(
+      line,
+      'missing',
+      `${line.value.water}Missing`,
+      `Type the ${line.value.water} level of this load case.`,
+    );
+  }
+  const slack = 2 * accuracyPx * map.unitsPerPx;
+  const shape = clipAtLevel(line.shape, (x, y) => elevationAt(map, x, y), level + slack);
+  if (shape === null) {
+    return problem(
+      line,
+      'wrong',
+      'faceAboveWater',
+      `The face marked as submerged lies wholly above the ${line.value.water}. Check the level and the known points.`,
+    );
+  }
+  return { id: line.id, line, role, shape, level, outHead: level, label: `the ${line.value.water} boundary` };
+}
+
+function freeOrHeld(
+  line: NetLine,
+  map: SectionMap,
+  headwater: number | null,
+  accuracyPx: number,
+): Potential | { finding: Finding } {
+  const base = { id: line.id, line, role: 'outlet' as const, shape: line.shape, label: labelOf(line) };
+  const held = line.kind === 'drain' ? line.value.head : null;
+  if (held !== null) return { ...base, level: held, outHead: held };
+  const { low, high, mean } = elevationsAlong(line.shape, map);
+  if (!Number.isFinite(low) || !Number.isFinite(high)) {
+    return problem(
+      line,
+      'wrong',
+      'outletNotFinite',
+      'The outlet has no usable elevation. Check the known points.',
+    );
+  }
+  const allowed = Math.max(
+    LEVEL_PART * Math.abs((headwater ?? high) - mean),
+    6 * accuracyPx * map.unitsPerPx,
+  );
+  return high - low <= allowed
+    ? { ...base, level: mean, outHead: mean }
+    : { ...base, level: null, outHead: low };
+}
+
+function labelOf(line: NetLine): string {
+  if (line.value.name.trim() !== '') return line.value.name.trim();
+  return line.kind === 'drain' ? 'the drain' : 'the outflow face';
+}
+
+function elevationsAlong(shape: Polyline, map: SectionMap): { low: number; high: number; mean: number } {
+  let low = Number.POSITIVE_INFINITY;
+  let high = Number.NEGATIVE_INFINITY;
+  let moment = 0;
+  let before = 0;
+  for (let i = 0; i < shape.cum.length; i += 1) {
+    const z = elevationAt(map, ...vertexOf(shape, i));
+    low = Math.min(low, z);
+    high = Math.max(high, z);
+    if (i > 0) moment += ((z + before) / 2) * (shape.cum[i]! - shape.cum[i - 1]!);
+    before = z;
+  }
+  return { low, high, mean: moment / lengthOf(shape) };
+}
+
+function missingSides(all: readonly Potential[], marked: readonly NetLine[], water: WaterLevels): Finding[] {
+  const findings: Finding[] = [];
+  const hasLine = (wanted: string | null, kinds: readonly string[]) =>
+    marked.some(
+      (line) => kinds.includes(line.kind) && (line.kind !== 'submergedFace' || line.value.water === wanted),
+    );
+  if (!hasLine('headwater', ['submergedFace'])) {
+    findings.push(
+      makeFinding(
+        'missing',
+        'headwaterBoundaryMissing',
+        'Mark the face or bed on which the headwater stands.',
+        {
+          cell: 'headwater',
+        },
+      ),
+    );
+  }
+  if (!hasLine('tailwater', ['submergedFace', 'drain', 'outflowFace'])) {
+    findings.push(
+      makeFinding(
+        'missing',
+        'outletMissing',
+        'Mark where the water leaves: the tailwater bed, a drain or a face of free outflow.',
+        {
+          cell: 'outlet',
+        },
+      ),
+    );
+  }
+  if (water.headwater === null && !all.some((potential) => potential.role === 'headwater')) {
+    findings.push(
+      makeFinding('missing', 'headwaterMissing', 'Type the headwater level of this load case.', {
+        cell: 'headwater',
+      }),
+    );
+  }
+  return findings;
+}
+
+function problem(line: NetLine, weight: Finding['weight'], code: string, text: string): { finding: Finding } {
+  const cell = line.kind === 'submergedFace' && line.value.water !== 'tailwater' ? 'headwater' : 'outlet';
+  return {
+    finding: makeFinding(weight, code, text, { cell, entityIds: [line.id], at: vertexOf(line.shape, 0) }),
+  };
+}

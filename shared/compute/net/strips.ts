@@ -1,0 +1,139 @@
+import { type Ring, ringOf } from '#shared/compute/geometry/polygon.ts';
+import {
+  lengthOf,
+  nearestOnPolyline,
+  type Polyline,
+  pieceOf,
+  pointAlong,
+  polylineOf,
+} from '#shared/compute/geometry/polyline.ts';
+import type { Pair } from '#shared/compute/geometry/predicates.ts';
+import { type CarrierGraph, wayAlong } from '#shared/compute/net/carrier-graph.ts';
+import type { Foot } from '#shared/compute/net/feet.ts';
+import type { OrderedPair } from '#shared/compute/net/order.ts';
+
+/** A head line ready to bound a strip: its shape from foot to foot; `fixed` is false for potential boundaries. */
+export type StripLine = {
+  readonly id: string;
+  readonly shape: Polyline;
+  readonly start: Foot | null;
+  readonly end: Foot | null;
+  /** A potential boundary bounds a strip only between the places where the carriers meet it. */
+  readonly isBoundary: boolean;
+};
+
+/** The ground between two neighbouring head lines, in base-raster pixels. */
+export type Strip = {
+  readonly before: string;
+  readonly after: string;
+  /** The parts of both lines that bound the strip; on a boundary, distances are counted from `beforeFrom`/`afterFrom`. */
+  readonly beforeShape: Polyline;
+  readonly afterShape: Polyline;
+  readonly ring: Ring;
+  /** Straight joins that close ends at which no boundary is traced. */
+  readonly openJoins: ReadonlyArray<readonly [Pair, Pair]>;
+};
+
+/** The longest way along carriers that still closes a strip, in lengths of its longer line. */
+const LONGEST_WAY = 4;
+
+/**
+ * The strip between two neighbouring head lines: one line, the piece of boundary between the feet, the next line
+ * backwards, and the other end. A way along the carriers closes an end; where none leads from line to line the
+ * straight join does. All in base-raster pixels. Null when the outline has no area.
+ */
+export function stripBetween(
+  before: StripLine,
+  after: StripLine,
+  pair: OrderedPair,
+  graph: CarrierGraph,
+): Strip | null {
+  const far = pair.sameDirection ? after : reversedLine(after);
+  const limit = LONGEST_WAY * Math.max(lengthOf(before.shape), lengthOf(far.shape));
+  const start = closingWay(before, far, 'start', graph, limit);
+  const end = closingWay(before, far, 'end', graph, limit);
+  const beforeShape = bounded(before, start.beforeS, end.beforeS);
+  const afterShape = bounded(far, start.afterS, end.afterS);
+  const ring = ringOf([
+    ...pointsOf(beforeShape),
+    ...end.points,
+    ...pointsOf(afterShape).reverse(),
+    ...[...start.points].reverse(),
+  ]);
+  if (ring === null) return null;
+  const openJoins: Array<readonly [Pair, Pair]> = [];
+  if (start.open) openJoins.push([pointAlong(beforeShape, 0), pointAlong(afterShape, 0)]);
+  if (end.open) {
+    openJoins.push([
+      pointAlong(beforeShape, lengthOf(beforeShape)),
+      pointAlong(afterShape, lengthOf(afterShape)),
+    ]);
+  }
+  return { before: before.id, after: after.id, beforeShape, afterShape, ring, openJoins };
+}
+
+function reversedLine(line: StripLine): StripLine {
+  const shape = polylineOf(pointsOf(line.shape).reverse()) ?? line.shape;
+  return { ...line, shape, start: line.end, end: line.start };
+}
+
+function pointsOf(shape: Polyline): Pair[] {
+  return pieceOf(shape, 0, lengthOf(shape));
+}
+
+/** How one end is closed: points from `before` to `after`, and where on each line it begins and ends. */
+type Closing = { points: Pair[]; beforeS: number | null; afterS: number | null; open: boolean };
+
+function closingWay(
+  before: StripLine,
+  after: StripLine,
+  end: 'start' | 'end',
+  graph: CarrierGraph,
+  limit: number,
+): Closing {
+  const footBefore = before.isBoundary ? null : before[end];
+  const footAfter = after.isBoundary ? null : after[end];
+  if (footBefore && footAfter) {
+    const way = wayAlong(
+      graph,
+      { carrier: footBefore.carrier.id, s: footBefore.s },
+      { line: footAfter.carrier.id, s: footAfter.s },
+      limit,
+    );
+    if (way) return { points: way.points, beforeS: null, afterS: null, open: false };
+  }
+  if (footAfter && before.isBoundary) {
+    const way = wayAlong(
+      graph,
+      { carrier: footAfter.carrier.id, s: footAfter.s },
+      { line: before.id, s: null },
+      limit,
+    );
+    if (way) return { points: way.points.reverse(), beforeS: way.endS, afterS: null, open: false };
+  }
+  if (footBefore && after.isBoundary) {
+    const way = wayAlong(
+      graph,
+      { carrier: footBefore.carrier.id, s: footBefore.s },
+      { line: after.id, s: null },
+      limit,
+    );
+    if (way) return { points: way.points, beforeS: null, afterS: way.endS, open: false };
+  }
+  return straightJoin(before, after, end);
+}
+
+function straightJoin(before: StripLine, after: StripLine, end: 'start' | 'end'): Closing {
+  const endOf = (line: StripLine) => pointAlong(line.shape, end === 'start' ? 0 : lengthOf(line.shape));
+  const nearestOn = (line: StripLine, other: StripLine) =>
+    line.isBoundary && !other.isBoundary ? nearestOnPolyline(line.shape, ...endOf(other)).s : null;
+  return { points: [], beforeS: nearestOn(before, after), afterS: nearestOn(after, before), open: true };
+}
+
+/** The part of a boundary between the two closings; all of it when they do not leave a piece in the right order. */
+function bounded(line: StripLine, from: number | null, to: number | null): Polyline {
+  const start = from ?? 0;
+  const end = to ?? lengthOf(line.shape);
+  if (!(end > start)) return line.shape;
+  return polylineOf(pieceOf(line.shape, start, end)) ?? line.shape;
+}

@@ -1,0 +1,47 @@
+import { makeFinding } from '#shared/compute/findings.ts';
+import { firstOf, lastOf, nearestOnPolyline } from '#shared/compute/geometry/polyline.ts';
+import type { Pair } from '#shared/compute/geometry/predicates.ts';
+import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
+import { elevationAt } from '#shared/compute/net/potentials.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import type { Finding } from '#shared/contract/reading.ts';
+import { fixedText } from '#shared/text/number-text.ts';
+
+/**
+ * Compares the headwater with the waterline that was traced: the place where the phreatic line starts at the submerged
+ * face. `headwater` and `tolerance` in the document's length unit. A net holds for the water level for which it was
+ * drawn, so a departure beyond the tolerance withholds every reading; a section without a phreatic line is confined
+ * and takes any headwater that covers its bed.
+ */
+export function checkWaterline(
+  lines: readonly NetLine[],
+  map: SectionMap,
+  headwater: number,
+  tolerance: number,
+): Finding[] {
+  const faces = linesOfKind(lines, 'submergedFace').filter((line) => line.value.water === 'headwater');
+  const phreatics = linesOfKind(lines, 'phreaticLine');
+  const starts = phreatics.map((line) => ({ line, at: startOf(line, faces) }));
+  if (starts.length === 0) return [];
+  const highest = starts
+    .map((start) => ({ ...start, elevation: elevationAt(map, ...start.at) }))
+    .sort((a, b) => b.elevation - a.elevation)[0]!;
+  if (Math.abs(highest.elevation - headwater) <= tolerance) return [];
+  return [
+    makeFinding(
+      'wrong',
+      'headwaterMoved',
+      `The phreatic line starts at elevation ${fixedText(highest.elevation, 2)}, but the headwater is ${fixedText(headwater, 2)}. A net holds for the level it was drawn for: trace it again for this headwater, or correct the level.`,
+      { cell: 'headwater', entityIds: [highest.line.id], at: highest.at },
+    ),
+  ];
+}
+
+/** The end of the phreatic line that lies nearer to the submerged face. */
+function startOf(line: NetLine, faces: readonly NetLine[]): Pair {
+  const first = firstOf(line.shape);
+  const last = lastOf(line.shape);
+  const distance = (at: Pair) =>
+    Math.min(...faces.map((face) => nearestOnPolyline(face.shape, ...at).distance));
+  return distance(first) <= distance(last) ? first : last;
+}

@@ -1,0 +1,51 @@
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { NetReading, PointReading } from '#shared/contract/reading.ts';
+import { type CsvCell, csvText } from '#shared/text/csv.ts';
+import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+
+/**
+ * The schedule of reading points as CSV, units in the heads of the columns, figures rounded to a tenth of what the
+ * schedule shows. Points in the order of the schedule. Where there is no figure the cell is empty and the remark says
+ * why; above the phreatic line the pressure is 0 and the remark says so.
+ */
+export function scheduleCsv(
+  document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
+  reading: NetReading,
+): string {
+  const units = unitNames(document.unitSystem);
+  const elevation = elevationUnit(document.unitSystem, document.datum);
+  const head: CsvCell[] = [
+    'Point',
+    `Offset, ${units.length}`,
+    `Elevation, ${elevation}`,
+    'Drops lost',
+    `Total head, ${elevation}`,
+    `Total head ± provisional, ${units.length}`,
+    `Pressure head, ${units.length}`,
+    `Pore pressure, ${units.pressure}`,
+    `Pore pressure ± provisional, ${units.pressure}`,
+    'Remark',
+  ];
+  return csvText([head, ...reading.points.map(rowOf)]);
+}
+
+function rowOf(point: PointReading): CsvCell[] {
+  return [
+    point.name,
+    rounded(point.offset, 3),
+    rounded(point.elevation, 3),
+    rounded(point.dropsLost, 3),
+    rounded(point.totalHead, 3),
+    rounded(point.totalHeadPlusMinus, 3),
+    rounded(point.pressureHead, 3),
+    rounded(point.porePressure, 2),
+    rounded(point.porePressurePlusMinus, 2),
+    [point.reason?.text, ...point.findings.map((found) => found.text)].filter(Boolean).join(' '),
+  ];
+}
+
+function rounded(value: number | null, decimals: number): number | null {
+  if (value === null) return null;
+  const kept = Number(value.toFixed(decimals));
+  return kept === 0 ? 0 : kept;
+}

@@ -1,0 +1,30 @@
+import { basicParabola } from '#shared/compute/exact/basic-parabola.ts';
+import type { ExactNet } from '#shared/compute/exact/exact-net.ts';
+import { flatApron } from '#shared/compute/exact/flat-apron.ts';
+import { sheetPile } from '#shared/compute/exact/sheet-pile.ts';
+
+/** The three exact nets against which readings are held, with the pixels to a metre that fill a 5,000 px sheet. */
+export const EXACT_NETS: ReadonlyArray<{ name: string; net: ExactNet; pxPerUnit: number }> = [
+  {
+    name: 'basic parabola (Kozeny 1931)',
+    net: basicParabola({ head: 20, drops: 10, channels: 3, focus: [14, 98] }),
+    pxPerUnit: 110,
+  },
+  {
+    name: 'flat apron on level ground (Pavlovsky 1922, Harr 1962)',
+    net: flatApron({
+      width: 20,
+      headwater: 106,
+      tailwater: 100,
+      drops: 12,
+      channels: 7,
+      middle: [0, 98],
+    }),
+    pxPerUnit: 55,
+  },
+  {
+    name: 'sheet pile in a half-space (Harr 1962)',
+    net: sheetPile({ depth: 10, headwater: 104, tailwater: 100, drops: 10, channels: 4, head: [0, 99] }),
+    pxPerUnit: 90,
+  },
+];
