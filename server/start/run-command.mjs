@@ -59,14 +59,14 @@ function withResolvers() {
 }
 
 /**
- * The last lines that say something (no stack), on one line: enough for a sentence.
+ * Why a program failed, on one line: the error it names, or else its last lines that say something.
  * @param {string} output
  * @param {number} [count]
  */
 export function lastLines(output, count = 1) {
-  const lines = output
-    .split('\n')
-    .map((line) => line.trim())
-    .filter((line) => line && !/^at /.test(line));
-  return lines.slice(-count).join(' ') || 'it gave no reason';
+  const lines = output.split('\n').map((line) => line.trim());
+  const named = lines.find((line) => /^(\w*Error|error)\b.*?: /.test(line));
+  if (named) return named;
+  const telling = lines.filter((line) => line && !/^(at |[{}^]|Node\.js v)/.test(line));
+  return telling.slice(-count).join(' ') || 'it gave no reason';
 }

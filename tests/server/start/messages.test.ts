@@ -176,8 +176,11 @@ describe('the count at the end of the tests', () => {
 });
 
 describe("a program's last words", () => {
-  it('leave out empty lines and stack frames', () => {
+  it('are the error it names, without empty lines and stack frames', () => {
     expect(lastLines('first\nbad thing\n\n    at run (x.js:1)\n', 1)).toBe('bad thing');
+    expect(lastLines("x.ts:1\nTypeError: no such thing\n  at run (x.ts:1) {\n  code: 'X'\n}\nNode.js v20\n")).toBe(
+      'TypeError: no such thing',
+    );
     expect(lastLines('', 1)).toBe('it gave no reason');
   });
 });
