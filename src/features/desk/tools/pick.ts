@@ -1,0 +1,94 @@
+import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
+import { nearestOnLines, type PickableLine } from '#shared/compute/geometry/hit-test.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import { type EntityOf, entitiesOf } from '#shared/contract/document.ts';
+import type { ToolContext } from './tool-types.ts';
+
+export type Mark = {
+  readonly kind: 'readingPoint' | 'knownPoint';
+  readonly id: string;
+  readonly at: SheetPx;
+};
+/** What lies under the pointer. */
+export type Picked =
+  | Mark
+  | { readonly kind: 'note'; readonly id: string; readonly at: SheetPx }
+  | { readonly kind: 'line'; readonly id: string; readonly at: SheetPx; readonly segment: number };
+
+/** Marks are drawn some pixels wide, so they are met a little farther out than lines. */
+const MARK_EXTRA_PX = 3;
+
+/** Reach on the sheet, sheet pixels. */
+export function reachOf(context: ToolContext, extraPx = 0): number {
+  return (context.reachPx + extraPx) / context.zoom;
+}
+
+/** Lines that are shown, for picking and snapping; `except` leaves one out. */
+export function shownLines(context: ToolContext, except: string | null = null): PickableLine[] {
+  return entitiesOf(context.document, 'line')
+    .filter(({ id, value }) => id !== except && !context.hiddenKinds.includes(value.line))
+    .map(({ id, value }) => ({ id, points: value.points }));
+}
+
+/** Where a reading point stands on the sheet; null for a typed one before the section is set out. */
+export function placeOf(value: EntityOf<'readingPoint'>, map: SectionMap | null): SheetPx | null {
+  const { place } = value;
+  if (place.on === 'sheet') return sheetPx(...place.at);
+  return map?.toSheet(sectionPt(place.offset, place.elevation)) ?? null;
+}
+
+/** Known points and reading points that are shown. */
+export function shownMarks(context: ToolContext): Mark[] {
+  const marks: Mark[] = [];
+  if (!context.hiddenKinds.includes('readingPoint')) {
+    for (const { id, value } of entitiesOf(context.document, 'readingPoint')) {
+      const at = placeOf(value, context.map);
+      if (at !== null) marks.push({ kind: 'readingPoint', id, at });
+    }
+  }
+  if (!context.hiddenKinds.includes('knownPoint')) {
+    for (const { id, value } of entitiesOf(context.document, 'knownPoint')) {
+      marks.push({ kind: 'knownPoint', id, at: sheetPx(...value.at) });
+    }
+  }
+  return marks;
+}
+
+/** The mark under the pointer, of the kinds given; null when there is none. */
+export function markAt(context: ToolContext, at: SheetPx, kinds: readonly Mark['kind'][]): Mark | null {
+  return nearest(
+    shownMarks(context).filter((mark) => kinds.includes(mark.kind)),
+    at,
+    reachOf(context, MARK_EXTRA_PX),
+  );
+}
+
+/** What is under the pointer: a note's balloon before a mark before a line; null for bare sheet. */
+export function pickAt(context: ToolContext, at: SheetPx): Picked | null {
+  const balloons = context.hiddenKinds.includes('note') ? [] : context.balloons;
+  const balloon = nearest(balloons, at, reachOf(context, MARK_EXTRA_PX));
+  if (balloon !== null) return { kind: 'note', id: balloon.id, at: balloon.at };
+  const mark = markAt(context, at, ['readingPoint', 'knownPoint']);
+  if (mark !== null) return mark;
+  const hit = nearestOnLines(shownLines(context), at, reachOf(context));
+  return hit === null
+    ? null
+    : { kind: 'line', id: hit.id, at: sheetPx(hit.at[0], hit.at[1]), segment: hit.segment };
+}
+
+function nearest<T extends { readonly at: SheetPx }>(
+  things: readonly T[],
+  at: SheetPx,
+  reach: number,
+): T | null {
+  let best: T | null = null;
+  let bestDistance = reach;
+  for (const thing of things) {
+    const distance = Math.hypot(thing.at[0] - at[0], thing.at[1] - at[1]);
+    if (distance <= bestDistance) {
+      best = thing;
+      bestDistance = distance;
+    }
+  }
+  return best;
+}

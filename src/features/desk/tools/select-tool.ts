@@ -1,0 +1,121 @@
+import { deskToolText as text } from '#client/text/desk-tools.ts';
+import { sheetPx } from '#shared/compute/frames.ts';
+import { segmentAt } from '#shared/compute/geometry/hit-test.ts';
+import type { TracedLine } from '#shared/contract/document.ts';
+import type { LocalOp } from '../model/document-ops.ts';
+import { NO_SELECTION, selectOne } from '../model/selection.ts';
+import { toolForLine } from '../model/tool-choice.ts';
+import { dragTo, grabMark, grabVertex, letGo } from './drag.ts';
+import { withoutPoint, withPointInserted } from './line-points.ts';
+import { type Picked, pickAt, reachOf } from './pick.ts';
+import {
+  rest,
+  stay,
+  type ToolCommand,
+  type ToolContext,
+  type ToolEvent,
+  type ToolState,
+  type ToolStep,
+} from './tool-types.ts';
+
+/** Chooses things, moves vertices and marks, puts vertices in and takes them out, removes what is chosen. */
+export function selectStep(state: ToolState, event: ToolEvent, context: ToolContext): ToolStep {
+  switch (event.type) {
+    case 'press':
+      return (
+        grabVertex(context, event.at, event.keys) ??
+        grabMark(context, event.at, ['readingPoint', 'knownPoint']) ??
+        stay(state)
+      );
+    case 'move':
+      return state.at === 'dragging' ? dragTo(state, event.at, event.keys, context) : stay(state);
+    case 'release':
+      return state.at === 'dragging' ? letGo(state, event.at, event.keys, context) : stay(state);
+    case 'click':
+      return clicked(event, context);
+    case 'abandonDrag':
+      return rest({ do: 'preview', values: {} });
+    case 'cancel':
+      return rest({ do: 'preview', values: {} }, { do: 'select', selection: NO_SELECTION });
+    case 'takeBack':
+    case 'remove':
+      return removeSelected(context);
+    case 'finish':
+      return goOn(context);
+  }
+}
+
+function clicked(event: Extract<ToolEvent, { type: 'click' }>, context: ToolContext): ToolStep {
+  const inserted = event.count > 1 ? insertAt(event, context) : null;
+  if (inserted !== null) return inserted;
+  const picked = pickAt(context, event.at);
+  if (picked === null) return rest({ do: 'select', selection: NO_SELECTION });
+  if (picked.kind === 'note') return rest({ do: 'intent', intent: { type: 'openNote', noteId: picked.id } });
+  if (event.count > 1) return rest(...opened(picked));
+  // A click on a vertex of the chosen line has chosen that vertex already when it was pressed.
+  if (context.selection.kind === picked.kind && context.selection.ids.includes(picked.id)) return rest();
+  return rest({ do: 'select', selection: selectOne(picked.kind, picked.id) });
+}
+
+function opened(picked: Exclude<Picked, { kind: 'note' }>): ToolCommand[] {
+  const { id } = picked;
+  const select: ToolCommand = { do: 'select', selection: selectOne(picked.kind, id) };
+  if (picked.kind === 'line') return [select, { do: 'intent', intent: { type: 'openLine', id } }];
+  const type = picked.kind === 'knownPoint' ? 'openKnownPoint' : 'openReadingPoint';
+  return [select, { do: 'intent', intent: { type, id } }];
+}
+
+/** A double click on a segment of the chosen line puts a vertex in there. */
+function insertAt(event: Extract<ToolEvent, { type: 'click' }>, context: ToolContext): ToolStep | null {
+  const chosen = chosenLine(context);
+  if (chosen === null || context.readOnly) return null;
+  const { id, line } = chosen;
+  const reach = reachOf(context);
+  if (line.points.some(([x, y]) => Math.hypot(x - event.at[0], y - event.at[1]) <= reach)) return null;
+  const place = segmentAt(line.points, event.at, reach);
+  if (place === null) return null;
+  const value = withPointInserted(line, place.segment, sheetPx(place.at[0], place.at[1]));
+  return rest(
+    { do: 'run', label: text.insertedVertex, ops: [{ op: 'put', entityId: id, value }] },
+    { do: 'select', selection: selectOne('line', id, place.segment + 1) },
+  );
+}
+
+function chosenLine(context: ToolContext): { id: string; line: TracedLine } | null {
+  const { kind, ids } = context.selection;
+  const id = ids[0];
+  const value = id === undefined ? undefined : context.document.entities[id]?.value;
+  return kind === 'line' && ids.length === 1 && id !== undefined && value?.kind === 'line'
+    ? { id, line: value }
+    : null;
+}
+
+/** Removes the chosen vertex, or when none is chosen all that is. A line keeps two points at least. */
+function removeSelected(context: ToolContext): ToolStep {
+  if (context.readOnly || context.selection.kind === 'none') return rest();
+  const chosen = chosenLine(context);
+  const vertex = context.selection.vertex;
+  if (chosen !== null && vertex !== null && chosen.line.points.length > 2) {
+    const value = withoutPoint(chosen.line, vertex);
+    return rest(
+      { do: 'run', label: text.removedVertex(chosen.line), ops: [{ op: 'put', entityId: chosen.id, value }] },
+      { do: 'select', selection: selectOne('line', chosen.id, null) },
+    );
+  }
+  const ops: LocalOp[] = context.selection.ids.map((entityId) => ({ op: 'remove', entityId }));
+  return rest({ do: 'run', label: removalLabel(context), ops });
+}
+
+function removalLabel(context: ToolContext): string {
+  const value = context.document.entities[context.selection.ids[0] ?? '']?.value;
+  if (value?.kind === 'line') return text.removedLine(value);
+  return value?.kind === 'knownPoint' || value?.kind === 'readingPoint' ? text.removedMark(value.name) : '';
+}
+
+/** Goes on with the chosen line when it is unfinished. */
+function goOn(context: ToolContext): ToolStep {
+  const chosen = chosenLine(context);
+  if (chosen === null || chosen.line.finished || context.readOnly) return rest();
+  const { tool, boundary } = toolForLine(chosen.line);
+  return rest({ do: 'tool', tool, boundary }, { do: 'draft', draft: { lineId: chosen.id, atStart: false } });
+}

@@ -1,0 +1,125 @@
+import type { SheetPx } from '#shared/compute/frames.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import { readSetOut } from '#shared/compute/set-out.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { DeskState, DeskStore } from '../model/desk-state.ts';
+import { lineChoiceOf, toolForLine } from '../model/tool-choice.ts';
+import { overlayOf, stepTool, type ToolOverlay } from './tool-set.ts';
+import {
+  AT_REST,
+  type Balloon,
+  isGrabbing,
+  type Modifiers,
+  type ToolCommand,
+  type ToolContext,
+  type ToolEvent,
+  type ToolState,
+} from './tool-types.ts';
+
+/** What the view around the tools contributes to their context. */
+export type HostView = { zoom: number; reachPx: number; balloons: readonly Balloon[] };
+
+export type ToolHost = {
+  handle(event: ToolEvent, view: HostView): void;
+  overlay(at: SheetPx | null, keys: Modifiers, view: HostView): ToolOverlay;
+  /** True while the tool keeps the pointer, so that the sheet must not be panned by it. */
+  grabs(): boolean;
+  undo(): void;
+  redo(): void;
+  /** The set-out section of the document as it is now; null before it is set out. */
+  map(): SectionMap | null;
+};
+
+/** Runs the tool in hand against a desk store: keeps the machine's state and carries its commands out. */
+export function createToolHost(store: DeskStore): ToolHost {
+  let state: ToolState = AT_REST;
+  const mapOf = rememberedMap();
+
+  function contextFor(view: HostView): ToolContext {
+    const { document, selection, draft, tool, boundaryKind, hiddenKinds, readOnly } = store.getState();
+    return {
+      document,
+      selection,
+      draft,
+      tool,
+      choice: lineChoiceOf(tool, boundaryKind),
+      hiddenKinds,
+      readOnly,
+      map: mapOf(document),
+      newId: store.newId,
+      ...view,
+    };
+  }
+
+  return {
+    handle(event, view) {
+      const step = stepTool(state, event, contextFor(view));
+      state = step.state;
+      for (const command of step.commands) perform(store, command);
+    },
+    overlay: (at, keys, view) => overlayOf(state, at, keys, contextFor(view)),
+    grabs: () => isGrabbing(state),
+    undo: () => stepBack(store, () => store.undo()),
+    redo: () => stepBack(store, () => store.redo()),
+    map: () => mapOf(store.getState().document),
+  };
+}
+
+function perform(store: DeskStore, command: ToolCommand): void {
+  switch (command.do) {
+    case 'run':
+      store.run(command.label, command.ops);
+      break;
+    case 'select':
+      store.select(command.selection);
+      break;
+    case 'draft':
+      store.setDraft(command.draft);
+      break;
+    case 'preview':
+      store.setPreview(command.values);
+      break;
+    case 'tool':
+      store.setTool(command.tool, command.boundary ?? undefined);
+      break;
+    case 'intent':
+      store.emitIntent(command.intent);
+      break;
+  }
+}
+
+/** Takes a step back or forward; a line that becomes unfinished by it can be gone on with at once. */
+function stepBack(store: DeskStore, step: () => unknown): void {
+  const before = store.getState();
+  step();
+  const after = store.getState();
+  const line = reopenedLine(before, after);
+  if (line !== null) store.setDraft({ lineId: line, atStart: false });
+}
+
+function reopenedLine(before: DeskState, after: DeskState): string | null {
+  if (after.draft !== null || before.document === after.document) return null;
+  for (const [id, { value }] of Object.entries(after.document.entities)) {
+    if (value.kind !== 'line' || value.finished || before.document.entities[id]?.value === value) continue;
+    if (toolForLine(value).tool === after.tool) return id;
+  }
+  return null;
+}
+
+/** The section's map, worked out again only when the known points or the way of setting out have changed. */
+function rememberedMap(): (document: FlowNetDocument) => SectionMap | null {
+  let values: unknown[] = [];
+  let map: SectionMap | null = null;
+  let known = false;
+  return (document) => {
+    const now = Object.values(document.entities)
+      .map((entity) => entity.value)
+      .filter((value) => value.kind === 'knownPoint' || value.kind === 'setOut');
+    if (!known || now.length !== values.length || now.some((value, i) => value !== values[i])) {
+      map = readSetOut(document).map;
+      values = now;
+      known = true;
+    }
+    return map;
+  };
+}

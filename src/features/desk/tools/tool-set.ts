@@ -1,0 +1,57 @@
+import type { SheetPx } from '#shared/compute/frames.ts';
+import { sheetPx } from '#shared/compute/frames.ts';
+import type { ToolId } from '../model/tool-choice.ts';
+import { growingEnd } from './line-points.ts';
+import { knownPointStep, noteStep, readingPointStep } from './place-tool.ts';
+import { selectStep } from './select-tool.ts';
+import { type Snap, snapAt } from './snap.ts';
+import type { Modifiers, ToolContext, ToolEvent, ToolState, ToolStep } from './tool-types.ts';
+import { draftLine, nextPlace, traceStep } from './trace-tool.ts';
+
+type Machine = (state: ToolState, event: ToolEvent, context: ToolContext) => ToolStep;
+
+const MACHINES: Record<ToolId, Machine> = {
+  select: selectStep,
+  knownPoint: knownPointStep,
+  equipotential: traceStep,
+  flowLine: traceStep,
+  phreaticLine: traceStep,
+  boundary: traceStep,
+  readingPoint: readingPointStep,
+  note: noteStep,
+};
+
+/** One step of the tool in hand: `(state, event, context) → {state, commands}`. */
+export function stepTool(state: ToolState, event: ToolEvent, context: ToolContext): ToolStep {
+  return MACHINES[context.tool](state, event, context);
+}
+
+/** What the tool in hand shows under the pointer before anything is pressed. */
+export type ToolOverlay = {
+  /** From the end of the line under way to where its next point would go. */
+  readonly rubber: readonly [SheetPx, SheetPx] | null;
+  readonly snap: Snap | null;
+  /** True where places should be set finer than the view shows. */
+  readonly magnify: boolean;
+};
+
+export const NO_OVERLAY: ToolOverlay = { rubber: null, snap: null, magnify: false };
+
+export function overlayOf(
+  state: ToolState,
+  at: SheetPx | null,
+  keys: Modifiers,
+  context: ToolContext,
+): ToolOverlay {
+  const magnify = context.tool === 'knownPoint' || state.at === 'dragging';
+  if (at === null || context.readOnly) return { ...NO_OVERLAY, magnify: magnify && at !== null };
+  if (state.at === 'dragging') {
+    const lineId = state.target.kind === 'vertex' ? state.target.lineId : null;
+    return { rubber: null, snap: lineId === null ? null : snapAt(context, at, keys, lineId), magnify };
+  }
+  if (context.choice === null) return { ...NO_OVERLAY, magnify };
+  const line = draftLine(context);
+  const end = line === null ? null : growingEnd(line, context.draft?.atStart ?? false);
+  const rubber = end === null ? null : ([sheetPx(...end), nextPlace(at, keys, context)] as const);
+  return { rubber, snap: snapAt(context, at, keys, context.draft?.lineId ?? null), magnify };
+}
