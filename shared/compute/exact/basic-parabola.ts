@@ -1,57 +1,42 @@
-import {
-  type ExactNet,
-  type ExactPlace,
-  equipotentialsOf,
-  flowLinesOf,
-} from '#shared/compute/exact/exact-net.ts';
+/**
+ * The basic parabola: flow through a homogeneous body on a level impervious base into a level drain that begins
+ * at the focus, with a parabolic upstream boundary. Frame of this file: x from the focus, positive upstream,
+ * y up from the base, both in one length unit; heads above the base.
+ *
+ * Source: J. Kozeny (1931), "Grundwasserbewegung bei freiem Spiegel, Fluss- und Kanalversickerung", Wasserkraft
+ * und Wasserwirtschaft 26; the map x + iy = (u + iv)², head h = 2·v0·u, phreatic line v = v0, S = 2·v0².
+ */
+export interface BasicParabola {
+  /** Twice the distance from the focus to the vertex of the phreatic line, S = q/k, length. */
+  S: number;
+  /** Head of the upstream boundary above the base, length. */
+  H: number;
+}
 
-export type BasicParabola = {
-  /** Head at the parabolic upstream boundary above the base, and number of drops into which it is parted. */
-  readonly head: number;
-  readonly drops: number;
-  /** Whole channels; the focal ordinate S is then H·Nf/Nd, so that the cells are square. */
-  readonly channels: number;
-  /** Offset and elevation of the focus, where the drain begins on the impervious base. */
-  readonly focus: ExactPlace;
-};
+/** Where the line of head `head` (0…H) meets the flow line at the part `channel` (0 base, 1 phreatic line). */
+export function basicParabolaPoint({ S }: BasicParabola, head: number, channel: number): [number, number] {
+  const v0 = Math.sqrt(S / 2);
+  const u = head / (2 * v0);
+  const v = v0 * channel;
+  return [u * u - v * v, 2 * u * v];
+}
 
 /**
- * The basic parabola: unconfined flow over a horizontal impervious base to a horizontal drain in it, entering through
- * an upstream boundary that is itself an equipotential, a parabola confocal with the others (with any other upstream
- * face it would not be exact). With the origin at the focus, X positive upstream and Y up, heads above the base:
- * (h + iψ)² = 2S(X + iY), so h = √(S(r + X)), ψ = √(S(r − X)); the phreatic line is ψ = S, Y² = 2SX + S², and
- * q = kS. Source: Kozeny (1931); Casagrande (1937).
+ * Head above the base at a point, length; null above the phreatic line, below the base or upstream of the
+ * boundary. u² is the root of u⁴ − x·u² − y²/4 = 0; the form with y²/(…) is used for x < 0, where the other one
+ * would cancel.
  */
-export function basicParabola({ head, drops, channels, focus }: BasicParabola): ExactNet {
-  const s = (head * channels) / drops;
-  const place = (h: number, psi: number): ExactPlace => [
-    focus[0] - (h * h - psi * psi) / (2 * s),
-    focus[1] + (h * psi) / s,
-  ];
-  const placeAt = (dropsLost: number, channel: number) =>
-    place((head * (drops - dropsLost)) / drops, s * (1 - channel / channels));
-  const inner = Array.from({ length: channels - 1 }, (_, i) => i + 1);
-  return {
-    headwater: focus[1] + head,
-    tailwater: null,
-    outHead: focus[1],
-    drops,
-    channels,
-    bounded: true,
-    placeAt,
-    headAt: (offset, elevation) => {
-      const x = focus[0] - offset;
-      const r = Math.hypot(x, elevation - focus[1]);
-      // r − x is the square of ψ over S: beyond S the place lies above the phreatic line.
-      return r - x > s ? Number.NaN : focus[1] + Math.sqrt(s * Math.max(0, r + x));
-    },
-    lines: [
-      { line: 'submergedFace', water: 'headwater', at: (part) => placeAt(0, part * channels) },
-      { line: 'drain', water: null, at: (part) => placeAt(drops, part * channels) },
-      { line: 'phreaticLine', water: null, at: (part) => placeAt(part * drops, 0) },
-      { line: 'impervious', water: null, at: (part) => placeAt(part * drops, channels) },
-      ...equipotentialsOf({ drops, channels, placeAt }),
-      ...flowLinesOf({ drops, placeAt }, inner),
-    ],
-  };
+export function basicParabolaHead({ S, H }: BasicParabola, x: number, y: number): number | null {
+  if (y < 0) return null;
+  const v0 = Math.sqrt(S / 2);
+  const root = Math.hypot(x, y);
+  const uSquared = x >= 0 ? (x + root) / 2 : (y * y) / (2 * (root - x));
+  const vSquared = x >= 0 ? (root === 0 ? 0 : (y * y) / (2 * (x + root))) : (root - x) / 2;
+  const head = 2 * v0 * Math.sqrt(uSquared);
+  return vSquared > v0 * v0 || head > H ? null : head;
+}
+
+/** Seepage through the body divided by the permeability, q/k = S, length (per unit length of the dam). */
+export function basicParabolaSeepage({ S }: BasicParabola): number {
+  return S;
 }

@@ -1,18 +1,18 @@
-import { basicParabola } from '#shared/compute/exact/basic-parabola.ts';
+import { basicParabolaNet } from '#shared/compute/exact/basic-parabola-net.ts';
 import type { ExactNet } from '#shared/compute/exact/exact-net.ts';
-import { flatApron } from '#shared/compute/exact/flat-apron.ts';
-import { sheetPile } from '#shared/compute/exact/sheet-pile.ts';
+import { flatApronNet } from '#shared/compute/exact/flat-apron-net.ts';
+import { sheetPileNet } from '#shared/compute/exact/sheet-pile-net.ts';
 
 /** The three exact nets against which readings are held, with the pixels to a metre that fill a 5,000 px sheet. */
 export const EXACT_NETS: ReadonlyArray<{ name: string; net: ExactNet; pxPerUnit: number }> = [
   {
     name: 'basic parabola (Kozeny 1931)',
-    net: basicParabola({ head: 20, drops: 10, channels: 3, focus: [14, 98] }),
+    net: basicParabolaNet({ head: 20, drops: 10, channels: 3, focus: [14, 98] }),
     pxPerUnit: 110,
   },
   {
     name: 'flat apron on level ground (Pavlovsky 1922, Harr 1962)',
-    net: flatApron({
+    net: flatApronNet({
       width: 20,
       headwater: 106,
       tailwater: 100,
@@ -24,7 +24,7 @@ export const EXACT_NETS: ReadonlyArray<{ name: string; net: ExactNet; pxPerUnit:
   },
   {
     name: 'sheet pile in a half-space (Harr 1962)',
-    net: sheetPile({ depth: 10, headwater: 104, tailwater: 100, drops: 10, channels: 4, head: [0, 99] }),
+    net: sheetPileNet({ depth: 10, headwater: 104, tailwater: 100, drops: 10, channels: 4, head: [0, 99] }),
     pxPerUnit: 90,
   },
 ];

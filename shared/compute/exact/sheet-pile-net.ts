@@ -5,7 +5,7 @@ import {
   flowLinesOf,
 } from '#shared/compute/exact/exact-net.ts';
 
-export type SheetPile = {
+export type SheetPileNet = {
   /** Depth of the pile below the level ground, s. */
   readonly depth: number;
   readonly headwater: number;
@@ -23,7 +23,7 @@ export type SheetPile = {
  * h = tailwater + Hθ/π, q between flow lines = kHΔv/π; down the downstream face h = (H/π)·arcsin(y/s). Source: Harr
  * (1962), Groundwater and Seepage.
  */
-export function sheetPile({ depth, headwater, tailwater, drops, channels, head }: SheetPile): ExactNet {
+export function sheetPileNet({ depth, headwater, tailwater, drops, channels, head }: SheetPileNet): ExactNet {
   const lost = headwater - tailwater;
   const place = (theta: number, v: number): ExactPlace => [
     head[0] + depth * Math.cos(theta) * Math.sinh(v),
