@@ -1,3 +1,4 @@
+import { basicParabolaHead, basicParabolaPoint } from '#shared/compute/exact/basic-parabola.ts';
 import {
   type ExactNet,
   type ExactPlace,

@@ -4,6 +4,7 @@ import {
   equipotentialsOf,
   flowLinesOf,
 } from '#shared/compute/exact/exact-net.ts';
+import { flatApronHead, flatApronPoint } from '#shared/compute/exact/flat-apron.ts';
 
 export type FlatApronNet = {
   /** Width of the apron along the flow, b. */
