@@ -25,6 +25,21 @@ function fromFullDisk(error: unknown): AppError | null {
   );
 }
 
+/** Characters that PostgreSQL keeps in no text or JSON: U+0000 (22021, 22P05) and halves of a pair (22P02). */
+const UNSTORABLE = ['22021', '22P05', '22P02'];
+
+function fromUnstorableText(error: unknown): AppError | null {
+  const code = error instanceof Error && 'code' in error ? String(error.code) : '';
+  if (!UNSTORABLE.includes(code)) return null;
+  return new AppError(
+    'invalid-input',
+    400,
+    'Please correct the input',
+    'A text contains a character that cannot be kept. Type it again instead of pasting it.',
+    { cause: error },
+  );
+}
+
 function fromUnknown(error: unknown): AppError {
   return new AppError(
     'internal',
@@ -37,7 +52,7 @@ function fromUnknown(error: unknown): AppError {
 
 export function toAppError(error: unknown): AppError {
   if (error instanceof AppError) return error;
-  return fromParser(error) ?? fromFullDisk(error) ?? fromUnknown(error);
+  return fromParser(error) ?? fromFullDisk(error) ?? fromUnstorableText(error) ?? fromUnknown(error);
 }
 
 function toProblem(error: AppError, req: Request): Problem {

@@ -1,7 +1,13 @@
 import type { RouteRecord } from '#server/http/route-record.ts';
+import { commandRoutes } from './command-routes.ts';
 import { netRoutes } from './net-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
 import { sessionRoutes } from './session-routes.ts';
 
 /** Every route of the API. A record cannot be made without an access rule. */
-export const routes: readonly RouteRecord[] = [...sessionRoutes, ...sectionRoutes, ...netRoutes];
+export const routes: readonly RouteRecord[] = [
+  ...sessionRoutes,
+  ...sectionRoutes,
+  ...netRoutes,
+  ...commandRoutes,
+];

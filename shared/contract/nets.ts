@@ -37,6 +37,9 @@ export const netDetailDto = z.object({
 });
 export type NetDetailDto = z.infer<typeof netDetailDto>;
 
+/** The database compares ids in small letters; a capital must not make a second entity of one. */
+const opEntityId = entityId.check(z.toLowerCase());
+
 /**
  * One change of one entity. `baseVersion` is the version it was made on: 0 for a new entity. Removing keeps the
  * row as a tombstone, so that a stale change of it is a conflict and not a resurrection; `put` on the tombstone's
@@ -45,11 +48,15 @@ export type NetDetailDto = z.infer<typeof netDetailDto>;
 export const netOp = z.discriminatedUnion('op', [
   z.object({
     op: z.literal('put'),
-    entityId,
+    entityId: opEntityId,
     baseVersion: z.number().check(z.int(), z.nonnegative()),
     value: documentEntity,
   }),
-  z.object({ op: z.literal('remove'), entityId, baseVersion: z.number().check(z.int(), z.positive()) }),
+  z.object({
+    op: z.literal('remove'),
+    entityId: opEntityId,
+    baseVersion: z.number().check(z.int(), z.positive()),
+  }),
 ]);
 export type NetOp = z.infer<typeof netOp>;
 
