@@ -16,3 +16,21 @@ export const PAGE_SIZE = 50;
 export const AUTOSAVE_MS = 1000;
 /** Side of a tile in pixels. */
 export const TILE_SIZE_PX = 512;
+/** Pixels of one scanned page: an A0 sheet at 600 dpi has 558 million. */
+export const MAX_PIXELS = 600_000_000;
+/** Pixels a PDF page is drawn to: an A0 sheet at 300 dpi has 139.5 million. */
+export const MAX_PDF_PIXELS = 140_000_000;
+/** Pages of one file; a bound set of drawings stays below it. */
+export const MAX_PAGES = 300;
+/** Dots per inch a PDF page is drawn at when no scan in it is finer; keeps a 0.13 mm line at 1.5 pixels. */
+export const DEFAULT_DPI = 300;
+/** Dots per inch above which more show nothing that a pen drew. */
+export const MAX_DPI = 600;
+/** Seconds one page may take to render. */
+export const RENDER_SECONDS = 180;
+/** Resident bytes the rendering process may hold; an A1 sheet at 300 dpi needs just under 1 GB from a PDF. */
+export const RENDER_MEMORY_BYTES = 1_200_000_000;
+/** Longer side of a thumbnail in pixels. */
+export const THUMBNAIL_PX = 480;
+/** Bytes that must stay free on the disk; below, uploads are refused so that the database keeps room. */
+export const FREE_DISK_FLOOR_BYTES = 1024 * 1024 * 1024;

@@ -1,0 +1,84 @@
+import path from 'node:path';
+import type { Metadata, Sharp } from 'sharp';
+import { flatShare, LINE_WORK_SHARE } from './flatness.ts';
+import { openImage, readHeader, refuseDecoding, statedDpi } from './image-source.ts';
+import { isPlainLab, openLab } from './lab-tiff.ts';
+import { refusals } from './refusal.ts';
+import type { RenderedSheet, RenderRequest, TileFormat } from './render-types.ts';
+import { readTiffPages, type TiffPage } from './tiff-directory.ts';
+import { writeTilePyramid } from './tile-pyramid.ts';
+
+const SAMPLE_PX = 1024;
+
+/** Draws one page of a scan at its own size, upright, in 8-bit grey or sRGB on white. @throws RenderRefusal */
+export async function renderImage(
+  request: RenderRequest,
+  onProgress: (share: number) => void,
+): Promise<RenderedSheet> {
+  const { file, pageNumber, outFolder } = request;
+  const directory = request.kind === 'tiff' ? (await readTiffPages(file))[pageNumber - 1] : undefined;
+  if (directory && isPlainLab(directory)) return renderLab(request, directory, onProgress);
+  const header = await readHeader(file, pageNumber);
+  const size = { widthPx: header.autoOrient.width, heightPx: header.autoOrient.height };
+  try {
+    const format = await chooseFormat(request, header, directory);
+    const image = await toEightBit(openImage(file, pageNumber), request, header);
+    const tiles = await writeTilePyramid(upright(image, header), size, format, outFolder, onProgress);
+    return { ...size, dpi: statedDpi(header), ...tiles, note: '' };
+  } catch (error) {
+    return refuseDecoding(error);
+  }
+}
+
+async function renderLab(request: RenderRequest, page: TiffPage, onProgress: (share: number) => void) {
+  const image = await openLab(request.file, request.pageNumber, page, path.dirname(request.outFolder));
+  const size = { widthPx: page.widthPx, heightPx: page.heightPx };
+  const tiles = await writeTilePyramid(image, size, 'jpeg', request.outFolder, onProgress);
+  return { ...size, dpi: null, ...tiles, note: '' };
+}
+
+function upright(image: Sharp, header: Metadata): Sharp {
+  return image
+    .autoOrient()
+    .flatten({ background: '#ffffff' })
+    .toColourspace(header.channels <= 2 ? 'b-w' : 'srgb');
+}
+
+/**
+ * Samples wider than a byte brought to the range a screen shows. A 12-bit scan stored in 16-bit words fills only a
+ * sixteenth of the range and would come out black, that is blank, if it were merely shifted down.
+ */
+async function toEightBit(image: Sharp, request: RenderRequest, header: Metadata): Promise<Sharp> {
+  if (header.depth === 'uchar') return image;
+  if (header.depth === 'uint') return image.linear(255 / 0xffffffff, 0);
+  const { channels } = await openImage(request.file, request.pageNumber).stats();
+  const colours = header.hasAlpha ? channels.slice(0, -1) : channels;
+  const low = Math.min(...colours.map((channel) => channel.min));
+  const high = Math.max(...colours.map((channel) => channel.max));
+  if (!Number.isFinite(low) || !Number.isFinite(high)) throw refusals.damagedImage('samples are not numbers');
+  if (header.depth === 'ushort') return high > 4095 || high === 0 ? image : image.linear(65535 / high, 0);
+  const scale = high > low ? 255 / (high - low) : 1;
+  return image.linear(scale, -low * scale);
+}
+
+/** PNG for line work, so that nothing is lost; JPEG for what has grain, where PNG would be many times larger. */
+async function chooseFormat(
+  request: RenderRequest,
+  header: Metadata,
+  directory: TiffPage | undefined,
+): Promise<TileFormat> {
+  if (request.kind === 'jpeg') return 'jpeg';
+  if (directory?.bitsPerSample === 1 || (header.bitsPerSample ?? 8) <= 2) return 'png';
+  const [width, height] = [Math.min(SAMPLE_PX, header.width), Math.min(SAMPLE_PX, header.height)];
+  const { data, info } = await openImage(request.file, request.pageNumber)
+    .extract({
+      left: Math.floor((header.width - width) / 2),
+      top: Math.floor((header.height - height) / 2),
+      width,
+      height,
+    })
+    .toColourspace('srgb')
+    .raw()
+    .toBuffer({ resolveWithObject: true });
+  return flatShare(data, info.width, info.channels, info.channels) >= LINE_WORK_SHARE ? 'png' : 'jpeg';
+}

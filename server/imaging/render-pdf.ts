@@ -1,0 +1,180 @@
+import { rm } from 'node:fs/promises';
+import { type Canvas, createCanvas } from '@napi-rs/canvas';
+import type { PageViewport, PDFPageProxy } from 'pdfjs-dist/legacy/build/pdf.mjs';
+import sharp from 'sharp';
+import { DEFAULT_DPI } from '#shared/contract/limits.ts';
+import { BandRaster } from './band-raster.ts';
+import { flatShare, LINE_WORK_SHARE } from './flatness.ts';
+import { openPage, withPdf } from './pdf-document.ts';
+import { type ChosenDpi, chooseDpi, mainScanDpi } from './pdf-dpi.ts';
+import { largestPicturePixels } from './pdf-picture-sizes.ts';
+import { RenderRefusal, refusals } from './refusal.ts';
+import { isTooLargePicture, pictureWarning, takeWarnings } from './render-log.ts';
+import type { RenderedSheet, RenderRequest } from './render-types.ts';
+import { writeTilePyramid } from './tile-pyramid.ts';
+
+/**
+ * Pixels drawn at a time, 4 bytes each on the canvas beside the decoded scan: three pieces for an A1 sheet at 300
+ * dpi. Larger pieces are faster, because pdf.js prepares a scan anew for each, but an A1 scan then needs 1.3 GB.
+ */
+const BAND_PIXELS = 24_000_000;
+/** Pixels handed on at a time, so that no second copy of the band exists. */
+const SLICE_PIXELS = 2_000_000;
+/** Share of the work that is drawing; the rest is cutting tiles. */
+const DRAWING_SHARE = 0.7;
+
+interface DrawnPage extends ChosenDpi {
+  widthPx: number;
+  heightPx: number;
+  isGrey: boolean;
+  isLineWork: boolean;
+}
+
+/** Draws one page of a PDF, turned as the page says, on white. @throws RenderRefusal */
+export async function renderPdf(
+  request: RenderRequest,
+  onProgress: (share: number) => void,
+): Promise<RenderedSheet> {
+  const raster = `${request.outFolder}.tif`;
+  try {
+    const drawn = await withPdf(request.file, async (document) => {
+      const page = await openPage(document, request.pageNumber);
+      return drawPage(page, request, raster, (share) => onProgress(share * DRAWING_SHARE));
+    });
+    // The page's pictures are dead now, but lie outside the heap, where their size hurries no collection.
+    globalThis.gc?.();
+    const { widthPx, heightPx, dpi, note } = drawn;
+    const image = sharp(raster, { limitInputPixels: false }).toColourspace(drawn.isGrey ? 'b-w' : 'srgb');
+    const tiles = await writeTilePyramid(
+      image,
+      drawn,
+      drawn.isLineWork ? 'png' : 'jpeg',
+      request.outFolder,
+      (share) => onProgress(DRAWING_SHARE + share * (1 - DRAWING_SHARE)),
+    );
+    return { widthPx, heightPx, dpi, note, ...tiles };
+  } finally {
+    await rm(raster, { force: true });
+  }
+}
+
+async function drawPage(
+  page: PDFPageProxy,
+  request: RenderRequest,
+  raster: string,
+  onProgress: (share: number) => void,
+): Promise<DrawnPage> {
+  const size = page.getViewport({ scale: 1 });
+  takeWarnings();
+  const scanDpi = request.dpi ? null : await finerScanDpi(page, request.file, size);
+  refusePictureFaults();
+  const chosen = chooseDpi(size.width, size.height, scanDpi, request.dpi);
+  const scale = chosen.dpi / 72;
+  const widthPx = Math.max(1, Math.round(size.width * scale));
+  const heightPx = Math.max(1, Math.round(size.height * scale));
+  const character = await drawBands(page, scale, { widthPx, heightPx }, raster, onProgress);
+  return { ...chosen, widthPx, heightPx, ...character };
+}
+
+/**
+ * Looking at the page's operators decodes its pictures a first time; it is done only when the file holds one that
+ * would be finer than the default on this page.
+ */
+async function finerScanDpi(page: PDFPageProxy, file: string, size: PageViewport): Promise<number | null> {
+  const atDefault = (size.width * size.height * DEFAULT_DPI * DEFAULT_DPI) / (72 * 72);
+  return (await largestPicturePixels(file)) > 1.1 * atDefault ? mainScanDpi(page) : null;
+}
+
+async function drawBands(
+  page: PDFPageProxy,
+  scale: number,
+  { widthPx, heightPx }: { widthPx: number; heightPx: number },
+  raster: string,
+  onProgress: (share: number) => void,
+) {
+  const bandRows = Math.max(1, Math.min(heightPx, Math.floor(BAND_PIXELS / widthPx)));
+  const output = await BandRaster.create(raster, widthPx, heightPx);
+  let [isGrey, flatRows] = [true, 0];
+  try {
+    for (let top = 0; top < heightPx; top += bandRows) {
+      const rows = Math.min(bandRows, heightPx - top);
+      const canvas = await drawBand(page, page.getViewport({ scale, offsetY: -top }), widthPx, rows);
+      const rgba = canvas.data();
+      flatRows += rows * flatShare(rgba, widthPx, 4, 3);
+      const sliceBytes = Math.max(1, Math.floor(SLICE_PIXELS / widthPx)) * widthPx * 4;
+      for (let at = 0; at < rgba.length; at += sliceBytes) {
+        const rgb = withoutAlpha(rgba.subarray(at, at + sliceBytes));
+        isGrey &&= hasNoColour(rgb);
+        await output.append(rgb);
+      }
+      // Gives the memory back at once, and keeps the canvas alive until here: its data are a view that does not.
+      canvas.width = 1;
+      onProgress((top + rows) / heightPx);
+    }
+  } finally {
+    await output.close();
+  }
+  return { isGrey, isLineWork: flatRows / heightPx >= LINE_WORK_SHARE };
+}
+
+async function drawBand(
+  page: PDFPageProxy,
+  viewport: PageViewport,
+  width: number,
+  rows: number,
+): Promise<Canvas> {
+  const canvas = createCanvas(width, rows);
+  const context = canvas.getContext('2d');
+  try {
+    // pdf.js is typed for the browser; this canvas has the part of the interface it draws with.
+    const canvasContext = context as unknown as CanvasRenderingContext2D;
+    const task = page.render({ canvas: null, canvasContext, viewport });
+    task.onContinue = collectFirst();
+    await task.promise;
+  } catch (error) {
+    throw error instanceof RenderRefusal ? error : refusals.damagedPdf(error);
+  }
+  refusePictureFaults();
+  return canvas;
+}
+
+/**
+ * Buffers of a decoded scan lie outside the heap, where their size hurries no collection; what its decoding left
+ * behind is collected before the scan is painted, or an A1 sheet would need half as much memory again.
+ */
+function collectFirst(): (proceed: () => void) => void {
+  let collectedAt = 0;
+  return (proceed) => {
+    if (Date.now() - collectedAt > 500 && process.memoryUsage.rss() > 400e6) {
+      globalThis.gc?.();
+      collectedAt = Date.now();
+    }
+    proceed();
+  };
+}
+
+/** A page without one of its pictures would look like a sheet with nothing drawn on it. */
+function refusePictureFaults(): void {
+  const fault = pictureWarning(takeWarnings());
+  if (!fault) return;
+  throw isTooLargePicture(fault) ? refusals.pictureTooLarge() : refusals.damagedPage(fault);
+}
+
+/** The band is opaque (drawn on white), so premultiplied and plain colours are the same. */
+function withoutAlpha(rgba: Uint8Array): Uint8Array {
+  const pixels = rgba.length >> 2;
+  const rgb = new Uint8Array(pixels * 3);
+  for (let pixel = 0, from = 0, to = 0; pixel < pixels; pixel++, from += 4, to += 3) {
+    rgb[to] = rgba[from]!;
+    rgb[to + 1] = rgba[from + 1]!;
+    rgb[to + 2] = rgba[from + 2]!;
+  }
+  return rgb;
+}
+
+function hasNoColour(rgb: Uint8Array): boolean {
+  for (let at = 0; at < rgb.length; at += 3) {
+    if (rgb[at] !== rgb[at + 1] || rgb[at] !== rgb[at + 2]) return false;
+  }
+  return true;
+}

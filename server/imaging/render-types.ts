@@ -1,0 +1,63 @@
+import type { RefusalCode } from './refusal.ts';
+import type { FileKind } from './sniff.ts';
+
+export type TileFormat = 'png' | 'jpeg';
+
+/** One page as the header tells it, before anything is drawn. */
+export interface ProbedPage {
+  pageNumber: number;
+  /** Upright size, after EXIF, TIFF or PDF rotation, in pixels of a scan or points (1/72 inch) of a PDF. */
+  width: number;
+  height: number;
+  unit: 'px' | 'pt';
+  /** Dots per inch as the file states them; null when it states none that can be true, and for a PDF. */
+  dpi: number | null;
+  /** Why this page cannot be drawn; null when nothing in its header speaks against it. */
+  refusal: RefusalInfo | null;
+}
+
+export interface RefusalInfo {
+  code: RefusalCode;
+  message: string;
+}
+
+export interface ProbeResult {
+  kind: FileKind;
+  pages: ProbedPage[];
+}
+
+export interface RenderRequest {
+  file: string;
+  kind: FileKind;
+  /** From 1. */
+  pageNumber: number;
+  /** Not there yet; afterwards it holds `<z>/<x>_<y>.<format>` and `thumbnail.webp`. */
+  outFolder: string;
+  /** Dots per inch for a PDF page instead of the chosen one. */
+  dpi?: number;
+}
+
+export interface RenderedSheet {
+  widthPx: number;
+  heightPx: number;
+  dpi: number | null;
+  tileFormat: TileFormat;
+  tileSizePx: number;
+  /** Level 0 is the whole sheet in one tile, this one the full size. */
+  maxZoom: number;
+  /** A sentence when the sheet was drawn reduced; empty otherwise. */
+  note: string;
+}
+
+/** From the parent to the rendering process. */
+export type RenderOrder =
+  | { id: number; kind: 'probe'; file: string }
+  | { id: number; kind: 'render'; request: RenderRequest };
+
+/** From the rendering process to the parent. */
+export type RenderAnswer =
+  | { id: number; kind: 'progress'; share: number }
+  | { id: number; kind: 'probed'; result: ProbeResult }
+  | { id: number; kind: 'rendered'; result: RenderedSheet }
+  | { id: number; kind: 'refused'; refusal: RefusalInfo }
+  | { id: number; kind: 'failed'; message: string };
