@@ -35,10 +35,11 @@ async function main(): Promise<void> {
 }
 
 main().catch((error: unknown) => {
-  const sentence = error instanceof Error ? error.message : String(error);
-  // Settings are the reader's own, so they need no stack; anything else does.
-  console.error(error instanceof ConfigError ? sentence : error);
-  // The process may end only after the start script has been told.
+  const fault = error instanceof Error ? error.message : String(error);
+  // Settings are the reader's own and need no stack; the start script says what it is told.
+  if (!(error instanceof ConfigError)) console.error(error);
+  else if (!process.send) console.error(fault);
   if (!process.send) process.exit(1);
-  process.send({ fault: sentence }, () => process.exit(1));
+  // The process may end only after the start script has been told.
+  process.send({ fault }, () => process.exit(1));
 });

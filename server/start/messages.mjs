@@ -84,6 +84,10 @@ export const faults = {
         ? `Tracehead is already running at ${address} (process ${pid}). Nothing was started.`
         : `Tracehead is being started already (process ${pid}). Nothing was started.`,
     ),
+  secretMissing: () =>
+    new StartFault(
+      'SESSION_SECRET must be set in production, to at least 32 random characters that stay the same from start to start. Make some with: openssl rand -base64 32',
+    ),
   /** @param {string} dataDir @param {string} why */
   clusterBroken: (dataDir, why) =>
     new StartFault(

@@ -6,7 +6,7 @@ import { openDatabase, prepareDatabase } from './database-steps.mjs';
 import { checkDiskSpace } from './disk-space.mjs';
 import { readJson } from './kept-file.mjs';
 import { live } from './life.mjs';
-import { say } from './messages.mjs';
+import { faults, say } from './messages.mjs';
 import { checkNode, ensurePackages } from './packages.mjs';
 import { projectRoot, startFiles, storageDirOf } from './paths.mjs';
 import { checkPortFree, DEFAULT_HOST, wantedPort } from './ports.mjs';
@@ -16,6 +16,8 @@ const storageDir = storageDirOf(process.env);
 
 await live(storageDir, async (life) => {
   checkNode(process.versions.node);
+  // The server would refuse too, but only after a database had been made.
+  if (process.env.NODE_ENV === 'production' && !process.env.SESSION_SECRET) throw faults.secretMissing();
   mkdirSync(storageDir, { recursive: true });
   const claim = claimStorage(startFiles(storageDir).running);
   life.atEnd(claim.release);
