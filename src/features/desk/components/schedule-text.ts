@@ -1,0 +1,45 @@
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { PointReading } from '#shared/contract/reading.ts';
+import { MINUS } from '#shared/text/number-text.ts';
+import { pointFigures, pointRemark, scheduleColumns } from './schedule-rows.ts';
+
+/** Text a spreadsheet would run as a formula when it is pasted. */
+const FORMULA_START = /^[\s\p{Cc}]*[=+\-@＝＋－＠|]/u;
+
+/**
+ * The schedule as it stands on the screen, tabs between columns, for pasting into a spreadsheet: minus signs as
+ * spreadsheets read them, the ± in columns of their own, so that every figure arrives as a number.
+ */
+export function scheduleTsv(
+  document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
+  points: readonly PointReading[],
+): string {
+  const heads = scheduleColumns(document).map((each) => each.label);
+  const rows = points.map((point) => rowOf(point, document));
+  return [withDoubtHeads(heads), ...rows].map((cells) => cells.map(cellText).join('\t')).join('\n');
+}
+
+function withDoubtHeads(heads: string[]): string[] {
+  const [point = '', offset = '', elevation = '', drops = '', total = '', head = '', pressure = ''] = heads;
+  return [point, offset, elevation, drops, total, '± provisional', head, pressure, '± provisional', 'Remark'];
+}
+
+function rowOf(point: PointReading, document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>): string[] {
+  const figures = pointFigures(point, document);
+  const number = (text: string) => text.replace(MINUS, '-').replace(' ± ', '').replace(/^–$/, '');
+  return [
+    guarded(point.name),
+    number(figures.offset),
+    number(figures.elevation),
+    number(figures.dropsLost),
+    number(figures.totalHead),
+    number(figures.totalHeadPlusMinus),
+    number(figures.pressureHead),
+    number(figures.porePressure),
+    number(figures.porePressurePlusMinus),
+    guarded(pointRemark(point)),
+  ];
+}
+
+const guarded = (text: string) => (FORMULA_START.test(text) ? `'${text}` : text);
+const cellText = (text: string) => text.replace(/[\t\r\n]+/g, ' ');

@@ -1,0 +1,64 @@
+import { classNames } from '#client/components/class-names.ts';
+import { useTypedNumber } from './use-typed-number.ts';
+import { useTypedText } from './use-typed-text.ts';
+
+/** Inputs that look like the table's own figures until they are pointed at or hold the focus. */
+const IN_TABLE =
+  'w-full min-w-[64px] rounded-sheet border bg-transparent px-1.5 py-[3px] hover:border-edge focus:border-edge focus:bg-white';
+
+interface TableNumberProps {
+  label: string;
+  value: number | null;
+  shown: string;
+  onCommit: (value: number | null) => void;
+  disabled?: boolean;
+}
+
+/** A figure in a table that is edited where it stands; the reason for refusing it stands below it. */
+export function TableNumber({ label, value, shown, onCommit, disabled = false }: TableNumberProps) {
+  const { error, input } = useTypedNumber({ value, shown, onCommit });
+  return (
+    <>
+      <input
+        type="text"
+        autoComplete="off"
+        spellCheck={false}
+        aria-label={label}
+        aria-invalid={error ? true : undefined}
+        disabled={disabled}
+        className={classNames(IN_TABLE, 'text-right', error ? 'border-wrong' : 'border-transparent')}
+        {...input}
+      />
+      {error ? (
+        <span role="alert" className="block text-sm text-wrong">
+          {error}
+        </span>
+      ) : null}
+    </>
+  );
+}
+
+export function TableText({
+  label,
+  value,
+  onCommit,
+  maxLength,
+}: {
+  label: string;
+  value: string;
+  onCommit: (value: string) => void;
+  maxLength: number;
+}) {
+  const input = useTypedText(value, onCommit);
+  return (
+    <input
+      type="text"
+      autoComplete="off"
+      spellCheck={false}
+      aria-label={label}
+      maxLength={maxLength}
+      className={classNames(IN_TABLE, 'border-transparent font-semibold')}
+      {...input}
+    />
+  );
+}

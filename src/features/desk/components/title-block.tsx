@@ -1,0 +1,107 @@
+import { classNames } from '#client/components/class-names.ts';
+import { titleBlockText as text } from '#client/text/title-block.ts';
+import { Runs } from './runs.tsx';
+import type { CellId, TitleCell } from './title-block-cells.ts';
+
+/** Columns of four each cell takes, as on the sheet. */
+const SPANS: Record<CellId, string> = {
+  section: 'col-span-2',
+  dam: 'col-span-2',
+  scale: 'col-span-2',
+  residual: 'col-span-2',
+  headwater: 'col-span-2',
+  outlet: 'col-span-2',
+  drops: 'col-span-1',
+  channels: 'col-span-1',
+  headPerDrop: 'col-span-2',
+  permeability: 'col-span-2',
+  seepage: 'col-span-2',
+  netCheck: 'col-span-4',
+  drawn: 'col-span-2',
+  checked: 'col-span-1',
+  calculation: 'col-span-1',
+};
+
+interface TitleBlockProps {
+  cells: readonly TitleCell[];
+  /** True while the figures shown are older than the traces. */
+  stale: boolean;
+  /** Cell whose step is open beside the sheet. */
+  open: CellId | null;
+  /** Null on a frozen sheet, where no cell does a step. */
+  onStep: ((id: CellId) => void) | null;
+}
+
+/**
+ * The title block at the foot of the margin: each cell shows one fact and its state, and pressing it does that step.
+ * Cells are ruled by a one-pixel gap over ink, so that they close up whatever their height.
+ */
+export function TitleBlock({ cells, stale, open, onStep }: TitleBlockProps) {
+  return (
+    // biome-ignore lint/a11y/useSemanticElements: a title block is no set of form fields
+    <div
+      role="group"
+      aria-label={text.name}
+      aria-busy={stale}
+      className="grid shrink-0 grid-cols-4 gap-px border-t-[1.5px] border-ink bg-ink"
+    >
+      {cells.map((cell) => (
+        <Cell key={cell.id} cell={cell} open={open === cell.id} onStep={onStep} />
+      ))}
+    </div>
+  );
+}
+
+const CELL = 'min-h-[43px] min-w-0 px-2 pt-1 pb-[5px] text-left leading-[1.3] break-words';
+
+function Cell({ cell, open, onStep }: { cell: TitleCell; open: boolean; onStep: TitleBlockProps['onStep'] }) {
+  const doubtful = cell.state !== 'ok';
+  const look = classNames(
+    CELL,
+    SPANS[cell.id],
+    doubtful ? 'bg-doubt' : 'bg-film',
+    open && 'outline-2 -outline-offset-2 outline-focus',
+  );
+  if (!onStep) {
+    return (
+      <div className={look}>
+        <Content cell={cell} />
+      </div>
+    );
+  }
+  return (
+    <button
+      type="button"
+      className={classNames(look, 'touch', !doubtful && 'hover:bg-hover')}
+      title={titleOf(cell)}
+      onClick={() => onStep(cell.id)}
+    >
+      <Content cell={cell} />
+    </button>
+  );
+}
+
+function titleOf(cell: TitleCell): string {
+  return [...cell.findings.map((found) => found.text), text.step[cell.id]].join('\n');
+}
+
+const FACT_COLOURS = { ok: '', question: 'text-attention', missing: 'text-attention', wrong: 'text-wrong' };
+/** Names of people and dates are lighter than figures, as on a drawing. */
+const LIGHT: readonly CellId[] = ['drawn', 'checked'];
+
+function Content({ cell }: { cell: TitleCell }) {
+  const weight = LIGHT.includes(cell.id) ? '' : 'font-semibold';
+  return (
+    <>
+      <span className="block text-[11.5px] leading-[1.25] text-ink-2">
+        {cell.label}
+        {cell.state === 'ok' ? null : (
+          <span className={FACT_COLOURS[cell.state]}> · {text.state[cell.state]}</span>
+        )}
+      </span>
+      <span className={classNames('block', weight, FACT_COLOURS[cell.state])}>
+        <Runs runs={cell.value} />
+      </span>
+    </>
+  );
+}

@@ -1,0 +1,74 @@
+import { useState } from 'react';
+import { parseTypedNumber } from '#client/lib/parse-number.ts';
+import { typedNumberText as text } from '#client/text/schedule.ts';
+import { MINUS } from '#shared/text/number-text.ts';
+
+interface TypedNumber {
+  value: number | null;
+  onCommit: (value: number | null) => void;
+  /** Whether the field may be left empty, which means null. */
+  optional?: boolean;
+  positive?: boolean;
+  /** How the value is shown while nobody types; the figure as entered by default. */
+  shown?: string;
+}
+
+/** The figure as it was entered, with a proper minus sign. */
+const asEntered = (value: number | null) => (value === null ? '' : String(value).replace('-', MINUS));
+
+/**
+ * A figure being typed: what is typed stays as typed until it can be taken, and what cannot be taken stays with the
+ * reason beside it. Taken when the field is left or Enter is pressed; Escape brings the old figure back.
+ */
+export function useTypedNumber({ value, onCommit, optional = false, positive = false, shown }: TypedNumber) {
+  const [typed, setTyped] = useState<string | null>(null);
+  const [error, setError] = useState<string | null>(null);
+
+  function commit(): void {
+    if (typed === null) return;
+    if (typed === asEntered(value)) {
+      take(value);
+      return;
+    }
+    const { parsed, fault } = parse(typed);
+    if (fault) setError(fault);
+    else take(parsed);
+  }
+
+  function parse(entered: string): { parsed: number | null; fault: string | null } {
+    if (entered.trim() === '') return { parsed: null, fault: optional ? null : text.needed };
+    const parsed = parseTypedNumber(entered);
+    if (parsed === null) return { parsed, fault: text.notANumber };
+    return { parsed, fault: positive && parsed <= 0 ? text.mustBePositive : null };
+  }
+
+  function take(next: number | null): void {
+    setTyped(null);
+    setError(null);
+    if (next !== value) onCommit(next);
+  }
+
+  return {
+    error,
+    input: {
+      value: typed ?? shown ?? asEntered(value),
+      onFocus: () => setTyped((now) => now ?? asEntered(value)),
+      onChange: (event: { target: { value: string } }) => {
+        setTyped(event.target.value);
+        setError(null);
+      },
+      onBlur: commit,
+      onKeyDown: (event: { key: string; preventDefault(): void; stopPropagation(): void }) => {
+        if (event.key === 'Enter') {
+          event.preventDefault();
+          commit();
+        }
+        if (event.key === 'Escape' && typed !== null && typed !== asEntered(value)) {
+          event.stopPropagation();
+          setTyped(asEntered(value));
+          setError(null);
+        }
+      },
+    },
+  };
+}

@@ -1,0 +1,54 @@
+/** Words of the schedule of reading points. */
+export const scheduleText = {
+  title: 'Reading points',
+  lead: (datum: string, gammaW: string, unit: string) =>
+    `${datum === '' ? 'elevations as typed' : `elevations to ${datum}`}, pressure with γw = ${gammaW} ${unit}`,
+  provisional: '± provisional',
+  unfinished: 'Net unfinished',
+  workingOut: 'working out…',
+  failed: 'The reading could not be worked out. Undo the last change, or reload the page.',
+  head: {
+    point: 'Point',
+    offset: (unit: string) => `Offset, ${unit}`,
+    elevation: (unit: string) => `Elevation, ${unit}`,
+    drops: 'Drops lost',
+    totalHead: (unit: string) => `Total head, ${unit}`,
+    pressureHead: (unit: string) => `Pressure head, ${unit}`,
+    pressure: (unit: string) => `Pore pressure, ${unit}`,
+    count: 'Count',
+  },
+  sortBy: (column: string) => `Sort by ${column}`,
+  copy: 'Copy table',
+  copied: 'The table is on the clipboard.',
+  notCopied: 'The browser did not let the table be copied. Download it as CSV instead.',
+  download: 'Download CSV',
+  add: 'Type a point',
+  empty: 'No reading points yet. Press R and click on the drawing, or type the coordinates of one.',
+  emptyReadOnly: 'No reading points on this net.',
+  nameOf: (name: string) => `Name of ${name}`,
+  offsetOf: (name: string) => `Offset of ${name}`,
+  elevationOf: (name: string) => `Elevation of ${name}`,
+  unnamed: 'unnamed point',
+  show: 'How counted',
+  showFor: (name: string) => `How the drops lost at ${name} were counted`,
+  hide: 'Close',
+  remove: 'Remove point',
+  abovePhreatic: 'above the phreatic line, suction left out',
+  reading: 'no figure yet',
+  caution:
+    'A flow net is a two-dimensional, steady-state estimate. Local codes and licensed practice decide what may be built on it.',
+  labels: {
+    renamed: (from: string, to: string) => `named ${from || 'a point'} ${to}`,
+    moved: (name: string) => `typed the coordinates of ${name}`,
+    removed: (name: string) => `removed ${name}`,
+    added: (name: string) => `added ${name} by its coordinates`,
+  },
+  needsSetOut: 'Set the section out first: a typed place needs the scale.',
+} as const;
+
+/** Words for figures that are typed. */
+export const typedNumberText = {
+  notANumber: 'Not a number. Type it as 118.25 or 118,25.',
+  needed: 'A figure is needed here.',
+  mustBePositive: 'It has to be greater than zero.',
+} as const;
