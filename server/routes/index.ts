@@ -1,12 +1,16 @@
 import type { RouteRecord } from '#server/http/route-record.ts';
 import { commandRoutes } from './command-routes.ts';
+import { damRoutes } from './dam-routes.ts';
 import { netRoutes } from './net-routes.ts';
+import { peopleRoutes } from './people-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
 import { sessionRoutes } from './session-routes.ts';
 
 /** Every route of the API. A record cannot be made without an access rule. */
 export const routes: readonly RouteRecord[] = [
   ...sessionRoutes,
+  ...peopleRoutes,
+  ...damRoutes,
   ...sectionRoutes,
   ...netRoutes,
   ...commandRoutes,
