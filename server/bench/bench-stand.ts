@@ -10,6 +10,7 @@ import { startServer } from '#server/start/server-process.mjs';
 
 export interface BenchStand {
   address: string;
+  serverPid: number;
   ownerUrl: string;
   appUrl: string;
   storageDir: string;
@@ -42,6 +43,7 @@ export async function openBenchStand(): Promise<BenchStand> {
   });
   return {
     address: server.address,
+    serverPid: server.pid,
     ownerUrl: urls.owner,
     appUrl: urls.app,
     storageDir,

@@ -3,9 +3,10 @@ import { parseArgs } from 'node:util';
 import type { Bench, BenchRow } from './bench.ts';
 import { firstLoad } from './first-load.ts';
 import { tableOf } from './table.ts';
+import { uploadGroupFour, uploadJpeg } from './upload-a1.ts';
 
 /** npm run bench [-- --only NAME --json FILE] */
-const benches: readonly Bench[] = [firstLoad];
+const benches: readonly Bench[] = [uploadGroupFour, uploadJpeg, firstLoad];
 
 const { values: options } = parseArgs({
   options: { only: { type: 'string', multiple: true }, json: { type: 'string' } },

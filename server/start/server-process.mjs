@@ -10,6 +10,7 @@ const STOP_MS = 40_000;
 /**
  * @typedef {object} RunningServer
  * @property {string} address where it listens
+ * @property {number} pid
  * @property {Promise<number>} ended the exit code, once it has stopped for whatever reason
  * @property {() => Promise<void>} stop
  */
@@ -40,7 +41,7 @@ export async function startServer(root, env, options = {}) {
   try {
     const address = await listening(child, ended);
     await ready(address, ended);
-    return { address, ended, stop };
+    return { address, pid: child.pid ?? 0, ended, stop };
   } catch (error) {
     await stop();
     throw error;
