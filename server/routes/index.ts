@@ -3,6 +3,7 @@ import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
 import { netRoutes } from './net-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
+import { scheduleRoutes } from './schedule-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
 import { sessionRoutes } from './session-routes.ts';
 
@@ -14,4 +15,5 @@ export const routes: readonly RouteRecord[] = [
   ...sectionRoutes,
   ...netRoutes,
   ...commandRoutes,
+  ...scheduleRoutes,
 ];

@@ -36,7 +36,7 @@ export function createCommandService({ manager, clock, live }: CommandServiceDep
     const stored = await storedAnswer(netId, batch);
     if (stored) return stored;
     const place = await placeOfNet(manager, netId);
-    refusePutAway(place);
+    refusePutAway(place, 422);
     const held = await loadHeld(place, batch);
     const faults = faultsOf(batch.ops, held);
     if (faults.length > 0) throw invalidInput(faults);
@@ -64,7 +64,7 @@ export function createCommandService({ manager, clock, live }: CommandServiceDep
     const stored = row.result as StoredBatch;
     if (stored.sha256 === hashOf(batch)) return stored.answer;
     throw unprocessable(
-      'conflict',
+      'invalid-input',
       'This number was used before',
       'This browser sent other changes under the same number before, so these were not taken. Reload the page.',
     );

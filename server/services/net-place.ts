@@ -2,7 +2,7 @@ import type { EntityManager } from 'typeorm';
 import { DamEntity } from '#server/entities/dam-entity.ts';
 import { DrawingEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
 import { NetEntity, SectionEntity } from '#server/entities/net-entity.ts';
-import { conflict, notFound } from '#server/errors/app-error.ts';
+import { AppError, notFound } from '#server/errors/app-error.ts';
 
 export interface SheetPlace {
   sheet: SheetEntity;
@@ -40,10 +40,11 @@ export async function placeOfNet(manager: EntityManager, netId: string): Promise
 }
 
 /**
- * What is put away is kept as it is, and so is everything in it.
+ * What is put away is kept as it is, and so is everything in it. Commands say so with 422, since their 409 carries a
+ * result.
  * @throws AppError conflict naming the outermost thing that has to be brought back first
  */
-export function refusePutAway(place: SheetPlace & Partial<NetPlace>): void {
+export function refusePutAway(place: SheetPlace & Partial<NetPlace>, status: 409 | 422 = 409): void {
   const away = (
     [
       ['dam', place.dam],
@@ -53,8 +54,9 @@ export function refusePutAway(place: SheetPlace & Partial<NetPlace>): void {
     ] as const
   ).find(([, thing]) => thing?.archivedAt);
   if (!away) return;
-  throw conflict(
+  throw new AppError(
     'conflict',
+    status,
     'This has been put away',
     `The ${away[0]} has been put away. Bring it back before you change anything in it.`,
   );

@@ -64,7 +64,7 @@ describe('saving by commands', () => {
     const sent = batchesOf()([put(line)]);
     await caller.post(`/nets/${netId}/commands`, sent).expect(200);
     const { body } = await caller.post(`/nets/${netId}/commands`, { ...sent, ops: [put(line)] }).expect(422);
-    expect(body.code).toBe('conflict');
+    expect(body.code).toBe('invalid-input');
     expect(entitiesOf((await openNet(caller, netId)).document, 'line')).toHaveLength(1);
   });
 
@@ -142,7 +142,7 @@ describe('saving by commands', () => {
   it('leaves a net that is put away as it is', async () => {
     const { caller, netId } = await addNet(app);
     await caller.post(`/nets/${netId}/archive`).expect(200);
-    const { body } = await caller.post(`/nets/${netId}/commands`, batchesOf()([put(line)])).expect(409);
+    const { body } = await caller.post(`/nets/${netId}/commands`, batchesOf()([put(line)])).expect(422);
     expect(body).toMatchObject({ code: 'conflict', detail: expect.stringMatching(/put away/) });
   });
 

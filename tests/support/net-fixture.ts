@@ -1,9 +1,17 @@
 import { v7 as uuidv7 } from 'uuid';
 import { DrawingEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
-import type { DocumentEntity, EntityKind, EntityOf, FlowNetDocument } from '#shared/contract/document.ts';
-import { singleOf } from '#shared/contract/document.ts';
+import {
+  type DocumentEntity,
+  type EntityKind,
+  type EntityOf,
+  type FlowNetDocument,
+  SINGLE_KINDS,
+  singleOf,
+} from '#shared/contract/document.ts';
 import type { NetDetailDto, NetOp } from '#shared/contract/nets.ts';
 import type { Caller } from './caller.ts';
+import { exactNetDocument } from './exact-nets/exact-net-document.ts';
+import { EXACT_NETS } from './exact-nets/exact-nets.ts';
 import type { TestApp } from './test-app.ts';
 import { addDam, addMember, type TestPerson } from './test-people.ts';
 
@@ -108,4 +116,30 @@ export function lineOf(
     drops: null,
     ...change,
   };
+}
+
+/** Puts the entities of a document into an empty net, as somebody would who traced it. */
+export async function fillNet(caller: Caller, netId: string, source: FlowNetDocument): Promise<void> {
+  const { document } = await openNet(caller, netId);
+  const ops = Object.values(source.entities).map(({ value }) =>
+    SINGLE_KINDS.includes(value.kind) ? putSingle(document, value.kind, value) : put(value),
+  );
+  await caller.post(`/nets/${netId}/commands`, batchesOf()(ops, 'traced the net')).expect(200);
+}
+
+/** A finished net: the basic parabola on a turned sheet, with reading points in its middle channel. */
+export function finishedDocument(readingCount = 3): FlowNetDocument {
+  const { net, pxPerUnit } = EXACT_NETS[0]!;
+  const readings = Array.from({ length: readingCount }, (_, i) => ({
+    at: net.placeAt(2.4 + 2 * i, 1.5),
+    clicked: true,
+  }));
+  return exactNetDocument(net, { pxPerUnit, readings });
+}
+
+/** A dam with a finished net. */
+export async function addFinishedNet(app: TestApp, engineerName?: string): Promise<NetPlaceFixture> {
+  const place = await addNet(app, engineerName);
+  await fillNet(place.caller, place.netId, finishedDocument());
+  return place;
 }

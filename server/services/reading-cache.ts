@@ -1,0 +1,22 @@
+import type { NetReading } from '#shared/contract/reading.ts';
+
+/** Readings kept in memory; a reading of a big net takes some 100 kB. */
+const KEPT = 64;
+
+/**
+ * The newest readings by what they are the reading of. A key names the net with its change number, so a reading kept
+ * under it never goes stale; the one asked for least recently makes room.
+ */
+export function createReadingCache() {
+  const kept = new Map<string, NetReading>();
+  return {
+    async get(key: string, read: () => Promise<NetReading>): Promise<NetReading> {
+      const reading = kept.get(key) ?? (await read());
+      kept.delete(key);
+      kept.set(key, reading);
+      const [oldest] = kept.keys();
+      if (kept.size > KEPT && oldest !== undefined) kept.delete(oldest);
+      return reading;
+    },
+  };
+}

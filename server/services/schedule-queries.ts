@@ -1,0 +1,59 @@
+import type { EntityManager } from 'typeorm';
+import { readNet } from '#shared/compute/read-net.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+import { scheduleCsv } from '#shared/text/schedule-csv.ts';
+import { readDocument } from './net-document.ts';
+import { type NetPlace, placeOfNet, sectionTitle } from './net-place.ts';
+import { createReadingCache } from './reading-cache.ts';
+
+const cache = createReadingCache();
+
+/** A file to download. */
+export interface Download {
+  fileName: string;
+  text: string;
+}
+
+/** The schedule and everything else read off the net as it stands. @throws AppError not-found */
+export async function scheduleOf(manager: EntityManager, netId: string): Promise<NetReading> {
+  return readingOf(manager, await placeOfNet(manager, netId));
+}
+
+function readingOf(manager: EntityManager, place: NetPlace): Promise<NetReading> {
+  const { net, dam } = place;
+  // Whatever the reading depends on besides the entities is in the key as well.
+  const key = JSON.stringify([net.id, net.changeNumber, net.name, net.unitSystem, dam.datum]);
+  return cache.get(key, async () => readNet(await readDocument(manager, place)));
+}
+
+/** Without it some spreadsheets read UTF-8 as Latin letters, and "±" comes out as two signs. */
+const BYTE_ORDER_MARK = '\ufeff';
+
+/** The schedule as CSV. */
+export async function scheduleFile(manager: EntityManager, netId: string): Promise<Download> {
+  const place = await placeOfNet(manager, netId);
+  const reading = await readingOf(manager, place);
+  const { unitSystem } = place.net;
+  return {
+    fileName: fileNameOf(place, 'csv'),
+    text: BYTE_ORDER_MARK + scheduleCsv({ unitSystem, datum: place.dam.datum }, reading),
+  };
+}
+
+/** The net's document as the command line and other programs read it. */
+export async function documentFile(manager: EntityManager, netId: string): Promise<Download> {
+  const place = await placeOfNet(manager, netId);
+  const document: FlowNetDocument = await readDocument(manager, place);
+  return { fileName: fileNameOf(place, 'json'), text: `${JSON.stringify(document, null, 2)}\n` };
+}
+
+/** Drawing, section and net, without the characters that file systems keep for themselves. */
+function fileNameOf({ drawing, section, net }: NetPlace, extension: string): string {
+  const words = [drawing.number, sectionTitle(section), net.name].filter(Boolean).join(' ');
+  const safe = words
+    .replaceAll(/[\\/:*?"<>|\p{Cc}]/gu, '-')
+    .replaceAll(/\s+/g, ' ')
+    .slice(0, 120);
+  return `${safe}.${extension}`;
+}
