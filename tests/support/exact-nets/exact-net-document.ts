@@ -64,6 +64,7 @@ export function sheetMapOf(net: ExactNet, tracing: Tracing): Similarity {
 export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetDocument {
   const map = sheetMapOf(net, tracing);
   const factor = tracing.lengthFactor ?? 1;
+  const spacing = (tracing.spacingPx ?? 14) / ((tracing.pxPerUnit ?? 60) * factor);
   const noise = seededNoise(tracing.seed ?? 1);
   const jitter = tracing.jitterPx ?? 0;
   const toSheet = ([offset, elevation]: ExactPlace): SheetPoint =>
@@ -77,7 +78,7 @@ export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetD
         kind: 'line',
         line: line.line,
         name: '',
-        points: evenly(line.at, toSheet, tracing.spacingPx ?? 14).map(trembled),
+        points: evenly(line.at, spacing).map(toSheet).map(trembled),
         finished: true,
         water: line.water,
         head: null,
@@ -166,20 +167,19 @@ function waterLevels(net: ExactNet, factor: number, tracing: Tracing): EntityOf<
   };
 }
 
-/** Points about evenly spaced along a smooth line, ends included. */
-function evenly(
-  at: (part: number) => ExactPlace,
-  toSheet: (place: ExactPlace) => SheetPoint,
-  spacing: number,
-): SheetPoint[] {
-  const fine = Array.from({ length: 2001 }, (_, i) => toSheet(at(i / 2000)));
+/**
+ * Points about evenly spaced along a smooth line, ends included, `spacing` in the net's own unit: so the vertices fall
+ * on the same places however the net lies on the sheet.
+ */
+function evenly(at: (part: number) => ExactPlace, spacing: number): ExactPlace[] {
+  const fine = Array.from({ length: 2001 }, (_, i) => at(i / 2000));
   const lengths = [0];
   for (let i = 1; i < fine.length; i += 1) {
     lengths.push(lengths[i - 1]! + Math.hypot(fine[i]![0] - fine[i - 1]![0], fine[i]![1] - fine[i - 1]![1]));
   }
   const whole = lengths[lengths.length - 1]!;
   const count = Math.max(1, Math.round(whole / spacing));
-  const points: SheetPoint[] = [];
+  const points: ExactPlace[] = [];
   let i = 0;
   for (let k = 0; k <= count; k += 1) {
     const wanted = (whole * k) / count;

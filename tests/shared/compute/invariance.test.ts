@@ -1,0 +1,114 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { readNet } from '#shared/compute/read-net.ts';
+import type { FlowNetDocument, VersionedEntity } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+import { entityIdOf, exactNetDocument, type Tracing } from '#tests/support/exact-nets/exact-net-document.ts';
+import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
+import { randomReadings } from '#tests/support/exact-nets/random-readings.ts';
+import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
+
+/** Drops lost at each point, in the order of the points' names; the same places are asked in every variant. */
+function dropsOf(reading: NetReading): number[] {
+  expect(reading.state, reading.findings.map((found) => found.text).join(' ')).toBe('read');
+  return [...reading.points]
+    .sort((a, b) => Number(a.name.slice(1)) - Number(b.name.slice(1)))
+    .map((point) => point.dropsLost ?? Number.NaN);
+}
+
+function expectSame(actual: number[], expected: number[], tolerance: number): void {
+  actual.forEach((drops, i) => {
+    expect(Math.abs(drops - expected[i]!)).toBeLessThan(tolerance);
+  });
+}
+
+function withEntities(document: FlowNetDocument, entities: VersionedEntity[]): FlowNetDocument {
+  return { ...document, entities: Object.fromEntries(entities.map((entity) => [entity.id, entity])) };
+}
+
+/** The same entities under ids in another order: as if they had been drawn in that order. */
+function drawnInAnotherOrder(document: FlowNetDocument, seed: number): FlowNetDocument {
+  const random = seededRandom(seed);
+  const shuffled = Object.values(document.entities)
+    .map((entity) => ({ entity, key: random() }))
+    .sort((a, b) => a.key - b.key);
+  return withEntities(
+    document,
+    shuffled.map(({ entity }, i) => ({ ...entity, id: entityIdOf(i + 1) })),
+  );
+}
+
+function someLinesReversed(document: FlowNetDocument, seed: number): FlowNetDocument {
+  const random = seededRandom(seed);
+  return withEntities(
+    document,
+    Object.values(document.entities).map((entity) =>
+      entity.value.kind === 'line' && random() < 0.5
+        ? { ...entity, value: { ...entity.value, points: [...entity.value.points].reverse() } }
+        : entity,
+    ),
+  );
+}
+
+/** A vertex more in the middle of every segment. */
+function withMoreVertices(document: FlowNetDocument): FlowNetDocument {
+  return withEntities(
+    document,
+    Object.values(document.entities).map((entity) => {
+      if (entity.value.kind !== 'line') return entity;
+      const points = entity.value.points.flatMap((point, i, all): Array<[number, number]> => {
+        const next = all[i + 1];
+        return next === undefined ? [point] : [point, [(point[0] + next[0]) / 2, (point[1] + next[1]) / 2]];
+      });
+      return { ...entity, value: { ...entity.value, points } };
+    }),
+  );
+}
+
+describe.each(EXACT_NETS)(
+  'a reading does not depend on how the net lies on the sheet: $name',
+  ({ net, pxPerUnit }) => {
+    const readings = randomReadings(net, 40, 21, 0.1).map((reading) => ({ ...reading, clicked: true }));
+    const traced = (tracing: Tracing = {}) => exactNetDocument(net, { pxPerUnit, readings, ...tracing });
+    const plain = dropsOf(readNet(traced()));
+
+    it('is unchanged by turning, shifting and mirroring the sheet', () => {
+      fc.assert(
+        fc.property(
+          fc.double({ min: -45, max: 45, noNaN: true }),
+          fc.double({ min: -5000, max: 5000, noNaN: true }),
+          fc.boolean(),
+          (turnDeg, shift, mirrored) => {
+            const drops = dropsOf(
+              readNet(traced({ turnDeg, mirrored, centre: [2500 + shift, 1750 - shift] })),
+            );
+            // 1e-6 of a drop: coordinates of 1e4 px to double precision, times the steepest cell.
+            expectSame(drops, plain, 1e-6);
+          },
+        ),
+        { numRuns: 12 },
+      );
+    });
+
+    it('is unchanged by scaling the sheet, but for the vertices falling elsewhere', () => {
+      for (const scale of [0.5, 2]) {
+        const drops = dropsOf(readNet(traced({ pxPerUnit: pxPerUnit * scale, spacingPx: 14 * scale })));
+        expectSame(drops, plain, 1e-6);
+      }
+    });
+
+    it('is unchanged by the order of drawing and the direction of the lines', () => {
+      fc.assert(
+        fc.property(fc.nat(1_000_000), (seed) => {
+          expectSame(dropsOf(readNet(drawnInAnotherOrder(traced(), seed))), plain, 1e-6);
+          expectSame(dropsOf(readNet(someLinesReversed(traced(), seed))), plain, 1e-6);
+        }),
+        { numRuns: 8 },
+      );
+    });
+
+    it('is unchanged by more vertices on the same lines', () => {
+      expectSame(dropsOf(readNet(withMoreVertices(traced()))), plain, 1e-6);
+    });
+  },
+);

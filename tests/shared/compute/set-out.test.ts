@@ -1,0 +1,249 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { sectionPt, sheetPx } from '#shared/compute/frames.ts';
+import { readSetOut } from '#shared/compute/set-out.ts';
+import { fitSimilarity, similarityResidual, similarityScale } from '#shared/compute/similarity.ts';
+import type { EntityOf, FlowNetDocument, UnitSystem } from '#shared/contract/document.ts';
+import { entityIdOf } from '#tests/support/exact-nets/exact-net-document.ts';
+import { PUBLISHED } from '#tests/support/published-checks.ts';
+
+type Known = Partial<EntityOf<'knownPoint'>> & { at: [number, number] };
+
+function sectionOf(
+  points: Known[],
+  setOut: Partial<EntityOf<'setOut'>> = {},
+  rest: { dpi?: number; unitSystem?: UnitSystem } = {},
+): FlowNetDocument {
+  const values = [
+    ...points.map((point, i) => ({
+      kind: 'knownPoint' as const,
+      name: `K${i + 1}`,
+      offset: null,
+      elevation: null,
+      use: 'fit' as const,
+      ...point,
+    })),
+    {
+      kind: 'setOut' as const,
+      method: 'points' as const,
+      distance: null,
+      level: 'line' as const,
+      offsetsGrow: null,
+      upstream: null,
+      upQuarterTurns: null,
+      statedScale: null,
+      ...setOut,
+    },
+  ];
+  return {
+    format: 'tracehead/flow-net',
+    version: 1,
+    id: entityIdOf(999),
+    name: '',
+    unitSystem: rest.unitSystem ?? 'SI',
+    datum: 'LD',
+    sheet: { widthPx: 3000, heightPx: 2000, dpi: rest.dpi ?? null },
+    entities: Object.fromEntries(
+      values.map((value, i) => [entityIdOf(i + 1), { id: entityIdOf(i + 1), version: 1, value }]),
+    ),
+  };
+}
+
+const known = (
+  x: number,
+  y: number,
+  offset: number,
+  elevation: number,
+  use: 'fit' | 'check' = 'fit',
+): Known => ({
+  at: [x, y],
+  offset,
+  elevation,
+  use,
+});
+
+describe('setting out: what is missing or doubtful is asked for', () => {
+  it('asks for a second point and for typed values', () => {
+    expect(readSetOut(sectionOf([])).findings[0]?.text).toBe('Mark two known points on the drawing.');
+    expect(readSetOut(sectionOf([known(1, 1, 0, 0)])).reading.state).toBe('incomplete');
+    const half = readSetOut(sectionOf([known(1, 1, 0, 0), { at: [500, 0], offset: 4 }]));
+    expect(half.reading.state).toBe('incomplete');
+    expect(half.map).toBeNull();
+  });
+
+  it('refuses points that coincide on the sheet or in their values', () => {
+    expect(readSetOut(sectionOf([known(10, 10, 0, 0), known(10.5, 10, 40, 0)])).reading.state).toBe(
+      'refused',
+    );
+    expect(readSetOut(sectionOf([known(10, 10, 5, 5), known(900, 10, 5, 5)])).reading.state).toBe('refused');
+  });
+
+  it('asks for the side when the line through two points is steep', () => {
+    const steep = readSetOut(sectionOf([known(1000, 1500, 0, 100), known(1010, 500, 0.2, 140)]));
+    expect(steep.reading.state).toBe('ambiguous');
+    expect(steep.findings[0]?.code).toBe('offsetsSideUnknown');
+    const said = (offsetsGrow: 'left' | 'right') =>
+      readSetOut(sectionOf([known(1000, 1500, 0, 100), known(1010, 500, 0.2, 140)], { offsetsGrow }));
+    expect(said('right').map!.toSection(sheetPx(1200, 1000))[0]).toBeGreaterThan(0);
+    expect(said('left').map!.toSection(sheetPx(1200, 1000))[0]).toBeLessThan(0);
+  });
+
+  it('asks which way is up when the sheet lies on its side, and takes the answer', () => {
+    // The sheet was turned a quarter clockwise: the section's up points to the right of the sheet.
+    const points = [known(500, 300, 0, 100), known(500, 1300, 50, 100)];
+    expect(readSetOut(sectionOf(points)).findings[0]?.code).toBe('upUnknown');
+    const turned = readSetOut(sectionOf(points, { upQuarterTurns: 1 }));
+    expect(turned.reading.state).toBe('fitted');
+    expect(turned.map!.toSection(sheetPx(700, 300))[1]).toBeCloseTo(110, 9);
+    expect(turned.reading.offsetsGrowLeft).toBe(false);
+  });
+
+  it('refuses an answer that contradicts the points', () => {
+    const answer = { offsetsGrow: 'left' as const, upQuarterTurns: 0 as const };
+    expect(
+      readSetOut(sectionOf([known(0, 900, 0, 100), known(2000, 900, 50, 100)], answer)).reading.state,
+    ).toBe('refused');
+  });
+});
+
+describe('setting out by known points', () => {
+  it('finds scale, rotation and a probe from two points (published check 7-01, complex algebra)', () => {
+    const { reading, map } = readSetOut(sectionOf([known(412, 1310, 0, 100), known(2860, 1262, 61.2, 100)]));
+    expect(reading.unitsPerPx).toBeCloseTo(PUBLISHED['7-01'].scale, 9);
+    expect(reading.rotationDeg).toBeCloseTo(PUBLISHED['7-01'].rotation, 6);
+    const [x, z] = map!.toSection(sheetPx(1500, 900));
+    expect(x).toBeCloseTo(PUBLISHED['7-01'].probe_x, 6);
+    expect(z).toBeCloseTo(PUBLISHED['7-01'].probe_z, 6);
+    expect(reading.residual).toBeNull();
+  });
+
+  it('fits four points and gives their residuals (published check 7-02, numpy lstsq)', () => {
+    const { reading } = readSetOut(
+      sectionOf([
+        known(100, 100, 10.02, 80.01),
+        known(900, 120, 50.03, 78.98),
+        known(880, 700, 48.97, 50.02),
+        known(110, 690, 10.51, 50.49),
+      ]),
+    );
+    const check = PUBLISHED['7-02'];
+    expect(reading.unitsPerPx).toBeCloseTo(Math.hypot(check.a, check.b), 8);
+    expect(reading.residual).toBeCloseTo(check.rms_per_point, 6);
+    const sizes = reading.residuals.map((r) => Math.hypot(r.offset, r.elevation));
+    expect(Math.max(...sizes)).toBeCloseTo(check.max_point_residual, 6);
+  });
+
+  it('fits large coordinates as the textbook does (published check 7-04, Ghilani and Wolf ch. 18)', () => {
+    const pair = (x: number, y: number, X: number, Y: number) =>
+      ({ sheet: [x, -y], section: [X, Y] }) as const;
+    const pairs = [
+      pair(121.622, -128.066, 1049422.4, 51089.2),
+      pair(141.228, 187.718, 1049413.95, 49659.3),
+      pair(175.802, 135.728, 1049244.95, 49884.95),
+    ];
+    const check = PUBLISHED['7-04'];
+    const fit = fitSimilarity(pairs, false)!;
+    expect(fit.re).toBeCloseTo(check.a, 5);
+    expect(fit.im).toBeCloseTo(check.b, 5);
+    expect(similarityScale(fit)).toBeCloseTo(check.scale, 5);
+    const residuals = pairs.flatMap((entry) => similarityResidual(fit, entry));
+    const expected = [check.vX1, check.vY1, check.vX2, check.vY2, check.vX3, check.vY3];
+    residuals.forEach((residual, i) => {
+      expect(Math.abs(residual - expected[i]!)).toBeLessThan(0.001);
+    });
+  });
+
+  it('finds offsets that grow to the left by themselves from a level line', () => {
+    const { reading, map } = readSetOut(sectionOf([known(500, 1000, 40, 100), known(2500, 1010, 0, 100)]));
+    expect(reading.offsetsGrowLeft).toBe(true);
+    expect(map!.toSection(sheetPx(500, 500))[1]).toBeGreaterThan(105);
+  });
+
+  it('leaves check points out of the fit and shows their residual', () => {
+    const { reading } = readSetOut(
+      sectionOf([known(0, 1000, 0, 100), known(2000, 1000, 40, 100), known(1000, 500, 20.3, 110, 'check')]),
+    );
+    expect(reading.residuals[2]!.offset).toBeCloseTo(-0.3, 9);
+    expect(reading.residual).toBeCloseTo(0.3, 9);
+  });
+
+  it('warns when the scale departs from the stated one by more than 2 %, lengths in feet being feet', () => {
+    // 1:480 at 300 dpi: a pixel is 1/300 inch on paper, so 480/300/12 ft on the ground.
+    const feet = (480 / 300 / 12) * 1200;
+    const points = [known(100, 900, 0, 50), known(1300, 900, feet, 50)];
+    const fits = readSetOut(sectionOf(points, { statedScale: 480 }, { dpi: 300, unitSystem: 'US' }));
+    expect(fits.reading.impliedScale).toBeCloseTo(480, 9);
+    expect(fits.findings).toEqual([]);
+    const off = readSetOut(sectionOf(points, { statedScale: 500 }, { dpi: 300, unitSystem: 'US' }));
+    expect(off.findings.map((found) => found.code)).toEqual(['scaleDisagrees']);
+  });
+
+  it('gives the same places, shifted, for a chainage of 250,000 and an elevation of 3,000', () => {
+    fc.assert(
+      fc.property(
+        fc.double({ min: 0, max: 3000, noNaN: true }),
+        fc.double({ min: 0, max: 2000, noNaN: true }),
+        (x, y) => {
+          const at = (dx: number, dz: number) =>
+            readSetOut(
+              sectionOf([
+                known(412, 1310, 0.13 + dx, 100.2 + dz),
+                known(2860, 1262, 61.2 + dx, 99.9 + dz),
+                known(1400, 400, 25.1 + dx, 122 + dz),
+              ]),
+            ).map!.toSection(sheetPx(x, y));
+          const near = at(0, 0);
+          const far = at(250_000, 3_000);
+          // 1e-8 m beside 2.5e5 m is 4e-14, a few units in the last place.
+          expect(Math.abs(far[0] - 250_000 - near[0])).toBeLessThan(1e-8);
+          expect(Math.abs(far[1] - 3_000 - near[1])).toBeLessThan(1e-8);
+        },
+      ),
+    );
+  });
+
+  it('carries places there and back', () => {
+    const { map } = readSetOut(sectionOf([known(412, 1310, 0, 100), known(2860, 1262, 61.2, 100)]));
+    const there = map!.toSheet(sectionPt(27.3, 109));
+    const back = map!.toSection(there);
+    expect(back[0]).toBeCloseTo(27.3, 10);
+    expect(back[1]).toBeCloseTo(109, 10);
+  });
+});
+
+describe('setting out by a distance', () => {
+  const points: Known[] = [
+    { at: [500, 1000], offset: 10 },
+    { at: [1500, 1000], elevation: 98 },
+  ];
+
+  it('needs distance, one elevation, one offset and the side', () => {
+    expect(readSetOut(sectionOf(points, { method: 'distance' })).reading.state).toBe('incomplete');
+    const asked = readSetOut(sectionOf(points, { method: 'distance', distance: 25 }));
+    expect(asked.findings[0]?.code).toBe('offsetsSideUnknown');
+  });
+
+  it('sets out with the line level, either side', () => {
+    const right = readSetOut(sectionOf(points, { method: 'distance', distance: 25, offsetsGrow: 'right' }));
+    expect(right.reading.unitsPerPx).toBeCloseTo(0.025, 12);
+    expect(right.map!.toSection(sheetPx(1500, 900))).toEqual([35, 100.5]);
+    const left = readSetOut(sectionOf(points, { method: 'distance', distance: 25, offsetsGrow: 'left' }));
+    expect(left.map!.toSection(sheetPx(1500, 900))[0]).toBeCloseTo(-15, 9);
+  });
+
+  it('takes the sheet for level where the line is not', () => {
+    const sloping: Known[] = [{ at: [500, 1000], offset: 0, elevation: 98 }, { at: [800, 600] }];
+    const { map, reading } = readSetOut(
+      sectionOf(sloping, { method: 'distance', distance: 10, level: 'sheet', offsetsGrow: 'right' }),
+    );
+    expect(reading.rotationDeg).toBeCloseTo(0, 12);
+    expect(map!.toSection(sheetPx(800, 600))[0]).toBeCloseTo(6, 9);
+    expect(map!.toSection(sheetPx(800, 600))[1]).toBeCloseTo(106, 9);
+  });
+
+  it('asks for up when a line said to be level stands upright', () => {
+    const upright: Known[] = [{ at: [500, 1000], offset: 0, elevation: 98 }, { at: [510, 200] }];
+    const asked = readSetOut(sectionOf(upright, { method: 'distance', distance: 10, offsetsGrow: 'right' }));
+    expect(asked.findings[0]?.code).toBe('upUnknown');
+  });
+});
