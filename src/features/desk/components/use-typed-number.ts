@@ -9,6 +9,8 @@ interface TypedNumber {
   /** Whether the field may be left empty, which means null. */
   optional?: boolean;
   positive?: boolean;
+  /** Least value that can be taken, with the sentence that says so. */
+  atLeast?: { least: number; fault: string };
   /** How the value is shown while nobody types; the figure as entered by default. */
   shown?: string;
 }
@@ -20,7 +22,14 @@ const asEntered = (value: number | null) => (value === null ? '' : String(value)
  * A figure being typed: what is typed stays as typed until it can be taken, and what cannot be taken stays with the
  * reason beside it. Taken when the field is left or Enter is pressed; Escape brings the old figure back.
  */
-export function useTypedNumber({ value, onCommit, optional = false, positive = false, shown }: TypedNumber) {
+export function useTypedNumber({
+  value,
+  onCommit,
+  optional = false,
+  positive = false,
+  atLeast,
+  shown,
+}: TypedNumber) {
   const [typed, setTyped] = useState<string | null>(null);
   const [error, setError] = useState<string | null>(null);
 
@@ -39,7 +48,8 @@ export function useTypedNumber({ value, onCommit, optional = false, positive = f
     if (entered.trim() === '') return { parsed: null, fault: optional ? null : text.needed };
     const parsed = parseTypedNumber(entered);
     if (parsed === null) return { parsed, fault: text.notANumber };
-    return { parsed, fault: positive && parsed <= 0 ? text.mustBePositive : null };
+    if (positive && parsed <= 0) return { parsed, fault: text.mustBePositive };
+    return { parsed, fault: atLeast && parsed < atLeast.least ? atLeast.fault : null };
   }
 
   function take(next: number | null): void {

@@ -1,0 +1,89 @@
+import { formText, setOutText as text } from '#client/text/desk-forms.ts';
+import type { EntityOf } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+import { signedText } from '#shared/text/number-text.ts';
+import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+import type { DeskFormProps } from './desk-form.ts';
+import { Choice, Figure, Words } from './form-fields.tsx';
+
+type KnownPoint = { id: string; value: EntityOf<'knownPoint'> };
+
+/** One block for each known point: what is typed for it, what it is used for, and how far off the fit passes it. */
+export function KnownPointRows({ points, ...form }: DeskFormProps & { points: readonly KnownPoint[] }) {
+  if (points.length === 0) return <p className="m-0 text-ink-2">{text.none}</p>;
+  return (
+    <ul className="m-0 list-none border-t border-rule p-0">
+      {points.map((point) => (
+        <li key={point.id} className="border-b border-rule py-2">
+          <KnownPointRow point={point} {...form} />
+        </li>
+      ))}
+    </ul>
+  );
+}
+
+function KnownPointRow({ point, document, reading, disabled, run }: DeskFormProps & { point: KnownPoint }) {
+  const { id, value } = point;
+  const name = value.name || text.unnamed;
+  const change = (changes: Partial<EntityOf<'knownPoint'>>) =>
+    run(text.labels.point(name), [{ op: 'put', entityId: id, value: { ...value, ...changes } }]);
+  return (
+    <fieldset className="m-0 border-0 p-0">
+      <legend className="sr-only">{name}</legend>
+      <div className="grid grid-cols-[minmax(60px,2fr)_3fr_3fr] gap-2">
+        <Words
+          label={text.name}
+          value={value.name}
+          maxLength={120}
+          disabled={disabled}
+          onCommit={(next) => change({ name: next })}
+        />
+        <Figure
+          label={text.offset(unitNames(document.unitSystem).length)}
+          value={value.offset}
+          optional
+          disabled={disabled}
+          onCommit={(offset) => change({ offset })}
+        />
+        <Figure
+          label={text.elevation(elevationUnit(document.unitSystem, document.datum))}
+          value={value.elevation}
+          optional
+          disabled={disabled}
+          onCommit={(elevation) => change({ elevation })}
+        />
+      </div>
+      <div className="mt-1.5 flex flex-wrap items-end gap-x-3 gap-y-1">
+        <Choice
+          label={text.use}
+          value={value.use}
+          names={text.uses}
+          disabled={disabled}
+          onCommit={(use) => change({ use })}
+        />
+        {disabled ? null : (
+          <button
+            type="button"
+            aria-label={formText.removeNamed(name)}
+            className="touch mb-1.5 text-sm text-ink-2 underline"
+            onClick={() => run(text.labels.removed(name), [{ op: 'remove', entityId: id }])}
+          >
+            {formText.remove}
+          </button>
+        )}
+      </div>
+      <Residual id={id} reading={reading} unit={unitNames(document.unitSystem).length} />
+    </fieldset>
+  );
+}
+
+/** With two points there is none: the fit passes through both, whatever was typed. */
+function Residual({ id, reading, unit }: { id: string; reading: NetReading | null; unit: string }) {
+  const residual = reading?.setOut.residuals.find((each) => each.id === id);
+  if (!residual || reading?.setOut.residual === null) return null;
+  return (
+    <p className="m-0 mt-1 text-sm text-ink-2">
+      {text.residual(signedText(residual.offset, 3), signedText(residual.elevation, 3), unit)}
+    </p>
+  );
+}

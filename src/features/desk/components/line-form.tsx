@@ -1,0 +1,147 @@
+import { useState } from 'react';
+import { Button } from '#client/components/button.tsx';
+import { lineText as text, waterText } from '#client/text/desk-forms.ts';
+import type { TracedLine } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+import { fixedText, plainText } from '#shared/text/number-text.ts';
+import { elevationUnit } from '#shared/text/unit-text.ts';
+import type { DeskFormProps } from './desk-form.ts';
+import { Choice, Figure, NeededFigure, Words } from './form-fields.tsx';
+import { FormFindings, FormPane } from './form-pane.tsx';
+
+/** Properties of one traced line; which of them matter depends on its kind. */
+export function LineForm({ lineId, ...form }: DeskFormProps & { lineId: string }) {
+  const { document, reading, disabled, run, onClose } = form;
+  const value = document.entities[lineId]?.value;
+  if (value?.kind !== 'line') return null;
+  const kind = text.kinds[value.line];
+  const change = (changes: Partial<TracedLine>) =>
+    run(text.labels.changed(kind), [{ op: 'put', entityId: lineId, value: { ...value, ...changes } }]);
+  const remove = () => {
+    run(text.labels.removed(kind), [{ op: 'remove', entityId: lineId }]);
+    onClose();
+  };
+  const findings = (reading?.findings ?? []).filter((found) => found.entityIds.includes(lineId));
+  return (
+    <FormPane title={value.name ? `${kind} ${value.name}` : kind} onClose={onClose}>
+      {value.finished ? null : <p className="m-0 text-attention">{text.unfinished}</p>}
+      <FormFindings findings={findings} />
+      <Choice
+        label={text.kind}
+        value={value.line}
+        names={text.kinds}
+        disabled={disabled}
+        onCommit={(line) => change(afterKind(line))}
+      />
+      <Words
+        label={text.name}
+        value={value.name}
+        maxLength={120}
+        disabled={disabled}
+        onCommit={(name) => change({ name })}
+      />
+      <KindFields line={value} lineId={lineId} form={form} change={change} />
+      {disabled ? null : (
+        <div className="border-t border-rule pt-3">
+          <Button look="wrong" onClick={remove}>
+            {text.remove}
+          </Button>
+        </div>
+      )}
+    </FormPane>
+  );
+}
+
+/** A line of another kind keeps nothing that only made sense for the old one. */
+const afterKind = (line: TracedLine['line']): Partial<TracedLine> => ({
+  line,
+  water: null,
+  head: null,
+  drops: null,
+});
+
+interface KindFieldsProps {
+  line: TracedLine;
+  lineId: string;
+  form: DeskFormProps;
+  change: (changes: Partial<TracedLine>) => void;
+}
+
+function KindFields({ line, lineId, form, change }: KindFieldsProps) {
+  if (line.line === 'equipotential') return <CountFields {...{ line, lineId, form, change }} />;
+  if (line.line === 'drain') return <DrainFields {...{ line, lineId, form, change }} />;
+  if (line.line !== 'submergedFace') return null;
+  return (
+    <Choice
+      label={text.water}
+      value={line.water ?? ''}
+      names={text.waters}
+      disabled={form.disabled}
+      onCommit={(water) => change({ water: water === '' ? null : water })}
+    />
+  );
+}
+
+function CountFields({ line, lineId, form, change }: KindFieldsProps) {
+  const { document, reading, disabled } = form;
+  return (
+    <>
+      <p className="m-0">
+        {countedText(reading, lineId, elevationUnit(document.unitSystem, document.datum))}
+      </p>
+      <Figure
+        label={text.typedDrops}
+        hint={text.typedHint}
+        value={line.drops}
+        optional
+        atLeast={{ least: 0, fault: text.dropsTooSmall }}
+        disabled={disabled}
+        // A line has one head: typing the one way takes the other back.
+        onCommit={(drops) => change(drops === null ? { drops } : { drops, head: null })}
+      />
+      <Figure
+        label={text.typedHead(elevationUnit(document.unitSystem, document.datum))}
+        value={line.head}
+        optional
+        disabled={disabled}
+        onCommit={(head) => change(head === null ? { head } : { head, drops: null })}
+      />
+    </>
+  );
+}
+
+function countedText(reading: NetReading | null, lineId: string, unit: string): string {
+  const read = reading?.lines.find((each) => each.id === lineId);
+  if (!read || read.drops === null) return text.uncounted;
+  return text.counted(plainText(read.drops), `${fixedText(read.head, 2)} ${unit}`);
+}
+
+/** A drain is under pressure only once its head is typed: until then it stays empty in the document. */
+function DrainFields({ line, form, change }: KindFieldsProps) {
+  const { document, disabled } = form;
+  const [asked, setAsked] = useState(false);
+  const pressure = line.head !== null || asked;
+  const choose = (state: 'empty' | 'pressure') => {
+    setAsked(state === 'pressure');
+    if (state === 'empty' && line.head !== null) change({ head: null });
+  };
+  return (
+    <>
+      <Choice
+        label={text.drainState}
+        value={pressure ? 'pressure' : 'empty'}
+        names={waterText.drainStates}
+        disabled={disabled}
+        onCommit={choose}
+      />
+      {pressure ? (
+        <NeededFigure
+          label={waterText.drainHead(elevationUnit(document.unitSystem, document.datum))}
+          value={line.head}
+          disabled={disabled}
+          onCommit={(head) => change({ head })}
+        />
+      ) : null}
+    </>
+  );
+}

@@ -1,0 +1,79 @@
+import { Button } from '#client/components/button.tsx';
+import type { BoundaryKind } from '#client/features/desk/model/tool-choice.ts';
+import { formText, waterText as text } from '#client/text/desk-forms.ts';
+import { type EntityOf, entitiesOf, singleOf } from '#shared/contract/document.ts';
+import { fixedText } from '#shared/text/number-text.ts';
+import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+import type { DeskFormProps } from './desk-form.ts';
+import { Figure, NeededFigure, Words } from './form-fields.tsx';
+import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
+import { HeadBoundaries } from './head-boundaries.tsx';
+
+type WaterLevels = EntityOf<'waterLevels'>;
+
+interface WaterFormProps extends DeskFormProps {
+  fullSupplyLevel: number | null;
+  onTrace: (boundary: BoundaryKind) => void;
+  onOpenLine: (id: string) => void;
+}
+
+/** Water levels of the load case, and the boundaries that carry them. */
+export function WaterForm({ fullSupplyLevel, onTrace, onOpenLine, ...form }: WaterFormProps) {
+  const { document, reading, disabled, run } = form;
+  const held = singleOf(document, 'waterLevels');
+  if (!held) return null;
+  const level = elevationUnit(document.unitSystem, document.datum);
+  const { headwater, tailwater, gammaW, source } = held.value;
+  const change = (changes: Partial<WaterLevels>) =>
+    run(text.labels.levels, [{ op: 'put', entityId: held.id, value: { ...held.value, ...changes } }]);
+  const below = headwater !== null && tailwater !== null && headwater < tailwater;
+  return (
+    <FormPane title={text.title} onClose={form.onClose}>
+      <FormFindings findings={findingsFor(reading?.findings, 'headwater', 'outlet')} />
+      <Figure
+        label={text.headwater(level)}
+        value={headwater}
+        optional
+        disabled={disabled}
+        question={below ? text.below : null}
+        onCommit={(next) => change({ headwater: next })}
+      />
+      {headwater === null && fullSupplyLevel !== null && !disabled ? (
+        <div>
+          <Button look="quiet" onClick={() => change({ headwater: fullSupplyLevel })}>
+            {text.takeFullSupply(`${fixedText(fullSupplyLevel, 2)} ${level}`)}
+          </Button>
+        </div>
+      ) : null}
+      <Figure
+        label={text.tailwater(level)}
+        hint={text.tailwaterHint}
+        value={tailwater}
+        optional
+        disabled={disabled}
+        onCommit={(next) => change({ tailwater: next })}
+      />
+      <HeadBoundaries
+        lines={entitiesOf(document, 'line')}
+        disabled={disabled}
+        onTrace={onTrace}
+        onOpenLine={onOpenLine}
+      />
+      <NeededFigure
+        label={text.gammaW(unitNames(document.unitSystem).unitWeight)}
+        value={gammaW}
+        positive
+        disabled={disabled}
+        onCommit={(next) => change({ gammaW: next })}
+      />
+      <Words
+        label={formText.source}
+        hint={formText.sourceHint}
+        value={source}
+        maxLength={500}
+        disabled={disabled}
+        onCommit={(next) => change({ source: next })}
+      />
+    </FormPane>
+  );
+}

@@ -1,0 +1,173 @@
+import type { LineKind, PermeabilityUnit } from '#shared/contract/document.ts';
+
+/** Words of the forms beside the sheet. */
+export const formText = {
+  close: 'Close',
+  show: 'Show',
+  remove: 'Remove',
+  removeNamed: (name: string) => `Remove ${name}`,
+  readOnly: 'You can read this net but not change it.',
+  optional: 'may stay empty',
+  source: 'Source',
+  sourceHint: 'Where the figures come from: drawing, report, operator.',
+} as const;
+
+export const setOutText = {
+  title: 'Known points',
+  lead: 'Mark two points whose offset and elevation you know, as far apart as you can. Further points check the fit.',
+  place: 'Place known points',
+  method: 'What is known',
+  methods: { points: 'Two or more points', distance: 'A distance and one elevation' },
+  none: 'No known points yet.',
+  name: 'Name',
+  unnamed: 'known point',
+  offset: (unit: string) => `Offset, ${unit}`,
+  elevation: (unit: string) => `Elevation, ${unit}`,
+  use: 'Use',
+  uses: { fit: 'sets the scale', check: 'check only' },
+  residual: (offset: string, elevation: string, unit: string) =>
+    `off by ${offset} ${unit} in offset, ${elevation} ${unit} in elevation`,
+  distance: (unit: string) => `Distance between the first two points, ${unit}`,
+  distanceHint: 'Give one of the points its elevation and one its offset.',
+  level: 'What is level',
+  levels: { line: 'the line through the two points', sheet: 'the edge of the sheet' },
+  grow: 'Offsets grow towards',
+  grows: { '': 'as the points say', left: 'the left', right: 'the right' },
+  upstream: 'Upstream is at',
+  upstreams: { '': 'not said yet', left: 'the left', right: 'the right' },
+  up: 'Up on the section is',
+  ups: {
+    '': 'as the points say',
+    0: 'up on the sheet',
+    1: 'right on the sheet',
+    2: 'down on the sheet',
+    3: 'left on the sheet',
+  },
+  statedScale: 'Scale on the drawing, 1 :',
+  statedScaleHint: 'To compare with the fit; empty when the drawing states none.',
+  result: 'Fit',
+  scale: (scale: string) => `Scale ${scale}`,
+  implied: (scale: string) => `which is 1 : ${scale} at the scan’s resolution`,
+  rotation: (degrees: string) => `Turned by ${degrees}° on the sheet`,
+  residualAll: (figure: string) => `Residual of all points ${figure}`,
+  residualNone: 'Residual: none, two points only. A third point shows how far the fit can be trusted.',
+  labels: {
+    method: 'chose how the section is set out',
+    point: (name: string) => `typed known point ${name}`,
+    removed: (name: string) => `removed known point ${name}`,
+    setOut: 'changed how the section is set out',
+  },
+} as const;
+
+export const waterText = {
+  title: 'Water levels',
+  headwater: (unit: string) => `Headwater, ${unit}`,
+  tailwater: (unit: string) => `Tailwater, ${unit}`,
+  tailwaterHint: 'Empty when there is none: drains and faces of free outflow then carry their own heads.',
+  takeFullSupply: (level: string) => `Take the full supply level, ${level}`,
+  gammaW: (unit: string) => `Unit weight of water γw, ${unit}`,
+  below: 'The headwater lies below the tailwater. Check both figures.',
+  boundaries: 'Boundaries that carry a head',
+  noBoundaries: 'None traced yet. Trace the face under the headwater and the outlet as boundaries.',
+  traceHeadwater: 'Trace the face under the headwater',
+  traceOutlet: 'Trace the outlet',
+  drain: 'Drain',
+  drainStates: { empty: 'empty: its own elevation', pressure: 'under pressure' },
+  drainHead: (unit: string) => `Head in the drain, ${unit}`,
+  carries: {
+    headwater: 'carries the headwater level',
+    tailwater: 'carries the tailwater level',
+    own: 'water comes out freely: its own elevation',
+    unsaid: 'not said whose level it carries',
+  },
+  labels: { levels: 'changed the water levels', drain: (name: string) => `changed the head of ${name}` },
+} as const;
+
+export const permeabilityText = {
+  title: 'Permeability',
+  lead: 'Used for the seepage only; heads and pressures do not depend on it in a section of one soil.',
+  k: 'Permeability k',
+  kHint: 'Type 2e-7 for 2 × 10 to the power −7.',
+  unit: 'Unit',
+  units: {
+    'm/s': 'm/s',
+    'cm/s': 'cm/s',
+    'm/day': 'm/day',
+    'ft/s': 'ft/s',
+    'ft/min': 'ft/min',
+    'ft/day': 'ft/day',
+    'ft/year': 'ft/year',
+  } satisfies Record<PermeabilityUnit, string>,
+  factor: 'Known within a factor of (×/÷)',
+  factorHint: '1 or more; empty when it is not known.',
+  factorTooSmall: 'The factor has to be 1 or more.',
+  label: 'changed the permeability',
+} as const;
+
+export const countText = {
+  title: 'Count of drops and channels',
+  drops: 'Drops counted on the drawing, Nd',
+  dropsHint: 'From the headwater boundary, 0, to the outlet: 11 lines are 10 drops.',
+  traced: (count: string) => `The traced lines make ${count} drops.`,
+  tracedNone: 'The traced lines make no count yet.',
+  takeTraced: (count: string) => `Take ${count}`,
+  channels: 'Channels, Nf',
+  channelsHint: 'Empty: counted from the traced flow lines along one equipotential.',
+  cellRatio: 'Width of a cell across the flow over its length along it, B/L',
+  cellRatioHint: '1 when the cells are squares.',
+  tracing: 'Accuracy of tracing, px',
+  knownPoints: 'Accuracy of the known points, px',
+  accuracyHint: 'For the provisional ±.',
+  accuracyTooSmall: 'It cannot be below zero.',
+  label: 'changed the count',
+} as const;
+
+export const lineText = {
+  title: 'Line',
+  kind: 'Kind',
+  kinds: {
+    equipotential: 'Equipotential',
+    flowLine: 'Flow line',
+    phreaticLine: 'Phreatic line',
+    impervious: 'Impervious boundary',
+    soilBoundary: 'Soil boundary',
+    ground: 'Ground',
+    submergedFace: 'Face under water',
+    outflowFace: 'Face of free outflow',
+    drain: 'Drain',
+  } satisfies Record<LineKind, string>,
+  name: 'Name',
+  unfinished: 'This line is not finished and is left out of the reading.',
+  counted: (drops: string, head: string) => `Counted: ${drops} drops down, head ${head}.`,
+  uncounted: 'No count for this line yet.',
+  typedDrops: 'Drops lost, typed',
+  typedHead: (unit: string) => `Head printed on the drawing, ${unit}`,
+  typedHint: 'Empty: counted by its order between the boundaries.',
+  dropsTooSmall: 'Drops lost are counted from 0 at the headwater.',
+  water: 'Carries the level of',
+  waters: { '': 'not said yet', headwater: 'the headwater', tailwater: 'the tailwater' },
+  drainState: 'State of the drain',
+  remove: 'Remove this line',
+  labels: {
+    changed: (kind: string) => `changed a line: ${kind.toLowerCase()}`,
+    removed: (kind: string) => `removed a line: ${kind.toLowerCase()}`,
+  },
+} as const;
+
+export const pointFormText = {
+  title: 'Type a reading point',
+  name: 'Name',
+  nameHint: 'As the instrument is named.',
+  offset: (unit: string) => `Offset, ${unit}`,
+  elevation: (unit: string) => `Elevation, ${unit}`,
+  add: 'Add the point',
+  nameNeeded: 'Give it a name.',
+} as const;
+
+export const findingsText = {
+  title: 'Net check',
+  none: 'Nothing found. The checks made are of the set-out, the levels, the order of the lines and the count.',
+  weights: { wrong: 'Wrong', missing: 'Missing', question: 'Question', note: 'Note' },
+  show: 'Show on the sheet',
+  working: 'The net is being read…',
+} as const;
