@@ -2,6 +2,7 @@ import type { RouteRecord } from '#server/http/route-record.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
 import { netRoutes } from './net-routes.ts';
+import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
 import { scheduleRoutes } from './schedule-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
@@ -16,4 +17,5 @@ export const routes: readonly RouteRecord[] = [
   ...netRoutes,
   ...commandRoutes,
   ...scheduleRoutes,
+  ...noteRoutes,
 ];
