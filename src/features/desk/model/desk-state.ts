@@ -83,6 +83,9 @@ export type DeskActions = {
   onCommand(listener: (command: DeskCommand) => void): () => void;
   emitIntent(intent: DeskIntent): void;
   onIntent(listener: (intent: DeskIntent) => void): () => void;
+  /** Asks the canvas to bring a place of the sheet into view. */
+  lookAt(at: SheetPoint): void;
+  onLookAt(listener: (at: SheetPoint) => void): () => void;
   newId(): string;
   close(): void;
 };

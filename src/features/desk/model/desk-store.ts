@@ -1,7 +1,7 @@
 import { v7 as newUuid } from 'uuid';
 import { createStore } from 'zustand/vanilla';
 import { deskCanvasText as text } from '#client/text/desk-canvas.ts';
-import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type {
   CommandOp,
   DeskActions,
@@ -45,6 +45,7 @@ export function createDeskStore(
   const makeId = options.newId ?? newUuid;
   const commandListeners = new Set<(command: DeskCommand) => void>();
   const intentListeners = new Set<(intent: DeskIntent) => void>();
+  const lookListeners = new Set<(at: SheetPoint) => void>();
   let shared: SharedDocument = sharedDocumentOf(detail.document);
   let history: History = EMPTY_HISTORY;
   let commandNumber = 0;
@@ -212,12 +213,17 @@ export function createDeskStore(
       for (const listener of intentListeners) listener(intent);
     },
     onIntent: (listener) => subscribeTo(intentListeners, listener),
+    lookAt(at) {
+      for (const listener of lookListeners) listener(at);
+    },
+    onLookAt: (listener) => subscribeTo(lookListeners, listener),
     newId: makeId,
     close() {
       endAnswers?.();
       options.reader?.close();
       commandListeners.clear();
       intentListeners.clear();
+      lookListeners.clear();
     },
   };
   return { ...store, ...actions };

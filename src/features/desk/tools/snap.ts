@@ -1,13 +1,8 @@
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { nearestOnLines, nearestVertex, type PickableLine } from '#shared/compute/geometry/hit-test.ts';
+import type { Snap } from '../model/tool-overlay.ts';
 import { reachOf, shownLines } from './pick.ts';
 import type { Modifiers, ToolContext } from './tool-types.ts';
-
-export type Snap = {
-  readonly kind: 'end' | 'vertex' | 'line';
-  readonly at: SheetPx;
-  readonly lineId: string;
-};
 
 /**
  * What a place near existing lines snaps to: an end before a vertex before the nearest place on a line, within reach

@@ -4,7 +4,8 @@ import { readSetOut } from '#shared/compute/set-out.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { lineChoiceOf, toolForLine } from '../model/tool-choice.ts';
-import { overlayOf, stepTool, type ToolOverlay } from './tool-set.ts';
+import type { ToolOverlay } from '../model/tool-overlay.ts';
+import { overlayOf, stepTool } from './tool-set.ts';
 import {
   AT_REST,
   type Balloon,

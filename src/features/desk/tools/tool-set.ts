@@ -1,10 +1,11 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
 import type { ToolId } from '../model/tool-choice.ts';
+import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import { growingEnd } from './line-points.ts';
 import { knownPointStep, noteStep, readingPointStep } from './place-tool.ts';
 import { selectStep } from './select-tool.ts';
-import { type Snap, snapAt } from './snap.ts';
+import { snapAt } from './snap.ts';
 import type { Modifiers, ToolContext, ToolEvent, ToolState, ToolStep } from './tool-types.ts';
 import { draftLine, nextPlace, traceStep } from './trace-tool.ts';
 
@@ -25,17 +26,6 @@ const MACHINES: Record<ToolId, Machine> = {
 export function stepTool(state: ToolState, event: ToolEvent, context: ToolContext): ToolStep {
   return MACHINES[context.tool](state, event, context);
 }
-
-/** What the tool in hand shows under the pointer before anything is pressed. */
-export type ToolOverlay = {
-  /** From the end of the line under way to where its next point would go. */
-  readonly rubber: readonly [SheetPx, SheetPx] | null;
-  readonly snap: Snap | null;
-  /** True where places should be set finer than the view shows. */
-  readonly magnify: boolean;
-};
-
-export const NO_OVERLAY: ToolOverlay = { rubber: null, snap: null, magnify: false };
 
 export function overlayOf(
   state: ToolState,

@@ -1,0 +1,175 @@
+import { sectionPt } from '#shared/compute/frames.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import type { DocumentEntity, FlowNetDocument, SheetPoint, TracedLine } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+import { fixedText, plainText } from '#shared/text/number-text.ts';
+import type { HideableKind } from '../model/desk-state.ts';
+import type { Selection } from '../model/selection.ts';
+import { placeLabels } from './label-layout.ts';
+import { COLOURS, lookOf, unfinishedLook } from './line-look.ts';
+import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
+
+/** A note as the sheet shows it. */
+export type NoteBalloon = {
+  readonly id: string;
+  readonly number: number;
+  readonly at: SheetPoint;
+  readonly chosen: boolean;
+};
+
+export type SceneInput = {
+  readonly document: FlowNetDocument;
+  /** Entities as they look while they are dragged. */
+  readonly preview: Readonly<Record<string, DocumentEntity>>;
+  readonly reading: NetReading | null;
+  readonly selection: Selection;
+  readonly draftId: string | null;
+  readonly hiddenKinds: readonly HideableKind[];
+  readonly notes: readonly NoteBalloon[];
+  readonly map: SectionMap | null;
+  readonly readOnly: boolean;
+  readonly zoom: number;
+};
+
+type Shown = { readonly id: string; readonly value: DocumentEntity };
+const NO_OFFSET = [0, 0] as const;
+/** From the place of a note to the middle of its balloon. */
+const BALLOON_OFFSET_PX = [-22, 18] as const;
+
+/** Everything the sheet shows over the scan, from the bottom up: lines, labels, points, handles, notes. */
+export function buildScene(input: SceneInput): SceneItem[] {
+  const shown = shownEntities(input);
+  const lines = shown.flatMap((entity) => lineItem(entity, input));
+  lines.sort((a, b) => Number(a.strong) - Number(b.strong));
+  return [
+    ...lines,
+    ...labelItems(lines, input),
+    ...shown.flatMap((entity) => pointItem(entity, input)),
+    ...handleItems(shown, input),
+    ...doubtItems(input),
+    ...noteItems(input),
+  ];
+}
+
+function shownEntities(input: SceneInput): Shown[] {
+  return Object.values(input.document.entities)
+    .map(({ id, value }) => ({ id, value: input.preview[id] ?? value }))
+    .filter(
+      ({ value }) =>
+        !input.hiddenKinds.includes(value.kind === 'line' ? value.line : (value.kind as HideableKind)),
+    );
+}
+
+function isChosen(id: string, input: SceneInput): boolean {
+  return input.selection.ids.includes(id) || input.draftId === id;
+}
+
+function lineItem({ id, value }: Shown, input: SceneInput): SceneLine[] {
+  if (value.kind !== 'line' || value.points.length === 0) return [];
+  const look = value.finished || input.draftId === id ? lookOf(value.line) : unfinishedLook(value.line);
+  return [{ id, shape: 'line', points: value.points, look, strong: isChosen(id, input) }];
+}
+
+function mark(
+  id: string,
+  shape: MarkShape,
+  at: SheetPoint,
+  colour: string,
+  rest: Partial<Pick<SceneMark, 'text' | 'strong' | 'offsetPx'>> = {},
+): SceneMark {
+  return { id, shape, at, colour, text: '', strong: false, offsetPx: NO_OFFSET, ...rest };
+}
+
+/** Heads at the lower ends of the equipotentials, beside one another rather than over one another. */
+function labelItems(lines: readonly SceneLine[], input: SceneInput): SceneMark[] {
+  const ends = new Map<string, SheetPoint>();
+  const labels = lines.flatMap((line) => {
+    const text = headText(line.id, input);
+    if (text === null) return [];
+    const end = lowerEnd(line.points);
+    ends.set(line.id, end);
+    return [{ id: line.id, x: end[0] * input.zoom, y: end[1] * input.zoom, text, strong: line.strong }];
+  });
+  const offsets = placeLabels(labels);
+  return labels.map(({ id, text, strong }) =>
+    mark(`label ${id}`, 'label', ends.get(id)!, COLOURS.equipotential, {
+      text,
+      strong,
+      offsetPx: offsets.get(id)!,
+    }),
+  );
+}
+
+function lowerEnd(points: readonly SheetPoint[]): SheetPoint {
+  const first = points[0]!;
+  const last = points.at(-1)!;
+  return last[1] > first[1] ? last : first;
+}
+
+/** The head a line carries; before heads are known the drops lost at it; nothing for other kinds of line. */
+function headText(id: string, input: SceneInput): string | null {
+  const value = input.document.entities[id]?.value;
+  if (value?.kind !== 'line' || value.line !== 'equipotential') return null;
+  const read = input.reading?.lines.find((line) => line.id === id);
+  if (read === undefined) return null;
+  if (read.head !== null) return withoutTrailingZeros(fixedText(read.head, 2));
+  return read.drops === null ? null : plainText(read.drops, 3);
+}
+
+function withoutTrailingZeros(text: string): string {
+  return text.replace(/\.?0+$/, '');
+}
+
+function pointItem({ id, value }: Shown, input: SceneInput): SceneMark[] {
+  const strong = isChosen(id, input);
+  if (value.kind === 'knownPoint') {
+    return [mark(id, 'knownPoint', value.at, COLOURS.ink, { text: value.name, strong })];
+  }
+  if (value.kind !== 'readingPoint') return [];
+  const { place } = value;
+  if (place.on === 'sheet')
+    return [mark(id, 'readingPoint', place.at, COLOURS.point, { text: value.name, strong })];
+  const at = input.map?.toSheet(sectionPt(place.offset, place.elevation));
+  if (at === undefined) return [];
+  return [mark(id, 'readingPoint', [at[0], at[1]], COLOURS.point, { text: value.name, strong })];
+}
+
+/** Handles on the vertices of the one chosen line and of the line under way. */
+function handleItems(shown: readonly Shown[], input: SceneInput): SceneMark[] {
+  if (input.readOnly) return [];
+  const { selection } = input;
+  const id =
+    input.draftId ?? (selection.kind === 'line' && selection.ids.length === 1 ? selection.ids[0] : undefined);
+  const line = shown.find((entity) => entity.id === id)?.value;
+  if (id === undefined || line?.kind !== 'line') return [];
+  return line.points.map((at, i) =>
+    handleOf(id, line, at, i, selection.vertex === i && input.draftId === null),
+  );
+}
+
+function handleOf(id: string, line: TracedLine, at: SheetPoint, index: number, chosen: boolean): SceneMark {
+  return mark(`vertex ${id} ${index}`, chosen ? 'chosenHandle' : 'handle', at, lookOf(line.line).colour);
+}
+
+/** Places the reading finds wrong or doubtful: crossings, lines out of order. */
+function doubtItems(input: SceneInput): SceneMark[] {
+  const placed =
+    input.reading?.findings.filter((found) => found.at !== null && found.weight !== 'note') ?? [];
+  return placed.map((found, i) => mark(`doubt ${i} ${found.code}`, 'doubt', found.at!, COLOURS.attention));
+}
+
+function noteItems(input: SceneInput): SceneMark[] {
+  if (input.hiddenKinds.includes('note')) return [];
+  return input.notes.map((note) =>
+    mark(`note ${note.id}`, 'balloon', note.at, COLOURS.ink, {
+      text: String(note.number),
+      strong: note.chosen,
+      offsetPx: BALLOON_OFFSET_PX,
+    }),
+  );
+}
+
+/** Where the middle of a note's balloon lies, to be met there by the pointer. */
+export function balloonCentre(note: NoteBalloon, zoom: number): SheetPoint {
+  return [note.at[0] + BALLOON_OFFSET_PX[0] / zoom, note.at[1] + BALLOON_OFFSET_PX[1] / zoom];
+}

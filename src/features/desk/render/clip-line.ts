@@ -1,0 +1,65 @@
+import type { SheetPoint } from '#shared/contract/document.ts';
+import type { SheetFrame } from '../model/viewport.ts';
+
+/** A piece of a line inside a frame; `start`: distance along the whole line at which it begins. */
+export type LinePiece = { readonly points: SheetPoint[]; readonly start: number };
+
+/**
+ * The pieces of a polyline that lie in a frame. A line seen at forty times its size is hundreds of thousands of screen
+ * pixels long, and dashing or hatching what is out of sight would take longer than a frame.
+ */
+export function piecesIn(points: readonly SheetPoint[], frame: SheetFrame): LinePiece[] {
+  const pieces: LinePiece[] = [];
+  let open: LinePiece | null = null;
+  let along = 0;
+  for (let i = 0; i + 1 < points.length; i += 1) {
+    const a = points[i]!;
+    const b = points[i + 1]!;
+    const length = Math.hypot(b[0] - a[0], b[1] - a[1]);
+    const part = clippedPart(a, b, frame);
+    if (part === null) {
+      open = null;
+    } else {
+      const [from, to] = part;
+      if (open === null || from > 0) {
+        open = { points: [between(a, b, from)], start: along + from * length };
+        pieces.push(open);
+      }
+      open.points.push(between(a, b, to));
+      if (to < 1) open = null;
+    }
+    along += length;
+  }
+  return pieces;
+}
+
+function between(a: SheetPoint, b: SheetPoint, t: number): SheetPoint {
+  if (t === 0) return a;
+  if (t === 1) return b;
+  return [a[0] + t * (b[0] - a[0]), a[1] + t * (b[1] - a[1])];
+}
+
+/** Part of a segment inside a frame as two numbers from 0 to 1; null when none is. Liang and Barsky (1984). */
+function clippedPart(a: SheetPoint, b: SheetPoint, frame: SheetFrame): [number, number] | null {
+  const [left, top, width, height] = frame;
+  const dx = b[0] - a[0];
+  const dy = b[1] - a[1];
+  let from = 0;
+  let to = 1;
+  const edges: ReadonlyArray<readonly [number, number]> = [
+    [-dx, a[0] - left],
+    [dx, left + width - a[0]],
+    [-dy, a[1] - top],
+    [dy, top + height - a[1]],
+  ];
+  for (const [direction, distance] of edges) {
+    if (direction === 0) {
+      if (distance < 0) return null;
+      continue;
+    }
+    const t = distance / direction;
+    if (direction < 0) from = Math.max(from, t);
+    else to = Math.min(to, t);
+  }
+  return from <= to ? [from, to] : null;
+}

@@ -1,0 +1,45 @@
+import type { LineKind } from '#shared/contract/document.ts';
+
+export const COLOURS = {
+  ink: '#1c2733',
+  film: '#fafcfb',
+  equipotential: '#0f6b66',
+  flowLine: '#a8472b',
+  phreatic: '#2b5ea8',
+  boundary: '#5b5346',
+  point: '#6d2a78',
+  attention: '#9a6100',
+} as const;
+
+export type EndMark = 'none' | 'bar' | 'dot' | 'ring' | 'level';
+
+/** How a kind of line looks, in screen pixels: kinds differ by dash and end mark as well as by colour. */
+export type LineLook = {
+  readonly colour: string;
+  readonly widthPx: number;
+  readonly dashPx: readonly number[];
+  readonly end: EndMark;
+  /** Distance between hatch ticks on the side away from the flow; 0 = none. */
+  readonly hatchPx: number;
+};
+
+const LOOKS: Record<LineKind, LineLook> = {
+  equipotential: { colour: COLOURS.equipotential, widthPx: 2, dashPx: [], end: 'bar', hatchPx: 0 },
+  flowLine: { colour: COLOURS.flowLine, widthPx: 2, dashPx: [22, 3], end: 'dot', hatchPx: 0 },
+  phreaticLine: { colour: COLOURS.phreatic, widthPx: 2.4, dashPx: [9, 5], end: 'level', hatchPx: 0 },
+  submergedFace: { colour: COLOURS.equipotential, widthPx: 3.4, dashPx: [], end: 'level', hatchPx: 0 },
+  outflowFace: { colour: COLOURS.equipotential, widthPx: 3.4, dashPx: [3, 4], end: 'dot', hatchPx: 0 },
+  drain: { colour: COLOURS.boundary, widthPx: 2.6, dashPx: [7, 3], end: 'ring', hatchPx: 0 },
+  impervious: { colour: COLOURS.boundary, widthPx: 2.2, dashPx: [], end: 'none', hatchPx: 9 },
+  ground: { colour: COLOURS.boundary, widthPx: 1.6, dashPx: [], end: 'none', hatchPx: 26 },
+  soilBoundary: { colour: COLOURS.boundary, widthPx: 1.6, dashPx: [10, 3, 2, 3], end: 'none', hatchPx: 0 },
+};
+
+export function lookOf(kind: LineKind): LineLook {
+  return LOOKS[kind];
+}
+
+/** A line that is still being drawn: of its kind's colour, finely dashed and open at its ends. */
+export function unfinishedLook(kind: LineKind): LineLook {
+  return { ...LOOKS[kind], dashPx: [4, 3], end: 'ring', hatchPx: 0 };
+}
