@@ -1,6 +1,7 @@
 import type { RouteRecord } from '#server/http/route-record.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
+import { drawingRoutes } from './drawing-routes.ts';
 import { netRoutes } from './net-routes.ts';
 import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
@@ -13,6 +14,7 @@ export const routes: readonly RouteRecord[] = [
   ...sessionRoutes,
   ...peopleRoutes,
   ...damRoutes,
+  ...drawingRoutes,
   ...sectionRoutes,
   ...netRoutes,
   ...commandRoutes,

@@ -32,5 +32,3 @@ export const RENDER_SECONDS = 180;
 export const RENDER_MEMORY_BYTES = 1_200_000_000;
 /** Longer side of a thumbnail in pixels. */
 export const THUMBNAIL_PX = 480;
-/** Bytes that must stay free on the disk; below, uploads are refused so that the database keeps room. */
-export const FREE_DISK_FLOOR_BYTES = 1024 * 1024 * 1024;
