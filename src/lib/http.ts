@@ -84,7 +84,7 @@ async function fetchOnce(method: string, path: string, { query, body, signal }: 
  * Signing in again elsewhere in this browser renews the token. The write is repeated only when the session still
  * belongs to the same person: otherwise it would go out under another name.
  */
-async function renewToken(): Promise<boolean> {
+export async function renewToken(): Promise<boolean> {
   const before = currentPersonId();
   const response = await fetchOnce('GET', '/session', {});
   if (!response.ok) return false;

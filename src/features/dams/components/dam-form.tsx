@@ -1,0 +1,121 @@
+import { type FormEvent, useState } from 'react';
+import { Button } from '#client/components/button.tsx';
+import { NumberField, SelectField, TextField } from '#client/components/field.tsx';
+import { ProblemNote } from '#client/components/problem-note.tsx';
+import { fieldMessage } from '#client/lib/api-problem.ts';
+import { parseTypedNumber } from '#client/lib/parse-number.ts';
+import { commonText } from '#client/text/common.ts';
+import { damsText as text } from '#client/text/dams.ts';
+import type { DamDto } from '#shared/contract/dams.ts';
+import type { UnitSystem } from '#shared/contract/document.ts';
+import type { DamInput } from '../api/dam-mutations.ts';
+import { gammaUnit } from './dam-facts.tsx';
+
+/** Usual unit weight of water in the system's own unit. */
+const USUAL_GAMMA: Record<UnitSystem, string> = { SI: '9.81', US: '62.4' };
+
+interface Typed {
+  name: string;
+  unitSystem: UnitSystem;
+  datum: string;
+  fullSupplyLevel: string;
+  gammaW: string;
+}
+
+const typedFrom = (dam: DamDto | undefined): Typed => ({
+  name: dam?.name ?? '',
+  unitSystem: dam?.unitSystem ?? 'SI',
+  datum: dam?.datum ?? '',
+  fullSupplyLevel: dam?.fullSupplyLevel?.toString() ?? '',
+  gammaW: dam?.gammaW.toString() ?? USUAL_GAMMA.SI,
+});
+
+/** The input, or the message of the field that cannot be read. */
+function readTyped(typed: Typed): { input: DamInput } | { field: keyof Typed; message: string } {
+  const level = typed.fullSupplyLevel.trim() === '' ? null : parseTypedNumber(typed.fullSupplyLevel);
+  if (level === null && typed.fullSupplyLevel.trim() !== '')
+    return { field: 'fullSupplyLevel', message: text.notANumber };
+  const gammaW = parseTypedNumber(typed.gammaW);
+  if (gammaW === null || gammaW <= 0) return { field: 'gammaW', message: text.gammaPositive };
+  const { name, unitSystem, datum } = typed;
+  return { input: { name, unitSystem, datum, fullSupplyLevel: level, gammaW } };
+}
+
+interface DamFormProps {
+  dam?: DamDto;
+  error: unknown;
+  busy: boolean;
+  submitLabel: string;
+  onSubmit: (input: DamInput) => void;
+}
+
+/** What a dam is: name, units, datum, full supply level, unit weight of water. */
+export function DamForm({ dam, error, busy, submitLabel, onSubmit }: DamFormProps) {
+  const [typed, setTyped] = useState(() => typedFrom(dam));
+  const [wrong, setWrong] = useState<{ field: keyof Typed; message: string } | null>(null);
+  const set = (change: Partial<Typed>) => setTyped({ ...typed, ...change });
+  const errorOf = (field: keyof Typed) =>
+    wrong?.field === field ? wrong.message : fieldMessage(error, field);
+  const lengthUnit = typed.unitSystem === 'SI' ? 'm' : 'ft';
+  const submit = (event: FormEvent) => {
+    event.preventDefault();
+    const read = readTyped(typed);
+    setWrong('field' in read ? read : null);
+    if ('input' in read && !busy) onSubmit(read.input);
+  };
+  const changeSystem = (unitSystem: UnitSystem) => {
+    const untouched = typed.gammaW === USUAL_GAMMA[typed.unitSystem];
+    set(untouched ? { unitSystem, gammaW: USUAL_GAMMA[unitSystem] } : { unitSystem });
+  };
+  return (
+    <form onSubmit={submit} className="flex flex-col gap-3">
+      <ProblemNote error={error} />
+      <TextField
+        label={text.name}
+        required
+        maxLength={200}
+        error={errorOf('name')}
+        value={typed.name}
+        onChange={(event) => set({ name: event.target.value })}
+      />
+      <SelectField
+        label={text.unitSystem}
+        hint={dam ? text.unitsFixed : null}
+        value={typed.unitSystem}
+        onChange={(event) => changeSystem(event.target.value === 'US' ? 'US' : 'SI')}
+      >
+        <option value="SI">{text.si}</option>
+        <option value="US">{text.us}</option>
+      </SelectField>
+      <TextField
+        label={text.datum}
+        hint={text.datumHint}
+        maxLength={80}
+        error={errorOf('datum')}
+        value={typed.datum}
+        onChange={(event) => set({ datum: event.target.value })}
+      />
+      <NumberField
+        label={text.fullSupply}
+        hint={text.fullSupplyHint}
+        unit={`${lengthUnit} ${typed.datum}`.trim()}
+        error={errorOf('fullSupplyLevel')}
+        value={typed.fullSupplyLevel}
+        onChange={(event) => set({ fullSupplyLevel: event.target.value })}
+      />
+      <NumberField
+        label={text.gammaW}
+        hint={text.gammaWHint}
+        unit={gammaUnit(typed)}
+        error={errorOf('gammaW')}
+        value={typed.gammaW}
+        onChange={(event) => set({ gammaW: event.target.value })}
+      />
+      <div>
+        <Button type="submit" look="main" busy={busy} busyLabel={commonText.saving}>
+          {submitLabel}
+        </Button>
+      </div>
+    </form>
+  );
+}

@@ -1,0 +1,36 @@
+import { Fragment } from 'react';
+
+const ADDRESS = /(https?:\/\/[^\s<>"]+)/;
+
+const OWN_PAGE = /^\/(dams|drawings|nets|revisions|invitation|reset-password)\b/;
+
+/** A link of this site is taken as a path, so that it opens here whatever PUBLIC_URL says of host and port. */
+function hrefOf(address: string): string {
+  const url = new URL(address);
+  return OWN_PAGE.test(url.pathname) ? `${url.pathname}${url.search}${url.hash}` : address;
+}
+
+/**
+ * The mail's plain text with its links pressed as in a mail program. Only the text is shown: the mail's own HTML
+ * is never put into this page.
+ */
+export function MailText({ text }: { text: string }) {
+  const parts = text.split(ADDRESS);
+  return (
+    <div className="max-w-[72ch] break-words whitespace-pre-wrap">
+      {parts.map((part, index) => (
+        // The parts of one text never move.
+        // biome-ignore lint/suspicious/noArrayIndexKey: the position is what tells equal parts apart
+        <Fragment key={index}>
+          {ADDRESS.test(part) ? (
+            <a href={hrefOf(part)} rel="noreferrer">
+              {part}
+            </a>
+          ) : (
+            part
+          )}
+        </Fragment>
+      ))}
+    </div>
+  );
+}

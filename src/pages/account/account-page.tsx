@@ -1,0 +1,38 @@
+import { Page } from '#client/components/page.tsx';
+import { Panel } from '#client/components/panel.tsx';
+import {
+  EndAllSessions,
+  NameForm,
+  PasswordForm,
+} from '#client/features/session/components/account-forms.tsx';
+import { useSession } from '#client/features/session/hooks/use-session.ts';
+import { sessionText as text } from '#client/text/session.ts';
+import { AppFrame } from '../app-frame.tsx';
+
+export function AccountPage() {
+  const { person } = useSession();
+  if (!person) return null;
+  return (
+    <AppFrame trail={[{ label: text.accountTitle }]}>
+      <Page title={text.accountTitle} heading={text.accountTitle} lead={person.email} narrow>
+        <div className="flex flex-col gap-4">
+          <Panel title={text.name}>
+            <div className="p-3.5">
+              <NameForm name={person.name} />
+            </div>
+          </Panel>
+          <Panel title={text.password}>
+            <div className="p-3.5">
+              <PasswordForm />
+            </div>
+          </Panel>
+          <Panel title={text.endAllTitle}>
+            <div className="p-3.5">
+              <EndAllSessions />
+            </div>
+          </Panel>
+        </div>
+      </Page>
+    </AppFrame>
+  );
+}

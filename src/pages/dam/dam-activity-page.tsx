@@ -1,0 +1,32 @@
+import { useSuspenseQuery } from '@tanstack/react-query';
+import { Suspense } from 'react';
+import { useParams } from 'react-router-dom';
+import { Loading } from '#client/components/loading.tsx';
+import { Page } from '#client/components/page.tsx';
+import { Panel } from '#client/components/panel.tsx';
+import { ActivityTable } from '#client/features/activity/components/activity-list.tsx';
+import { damQuery } from '#client/features/dams/api/dam-queries.ts';
+import { paths } from '#client/lib/paths.ts';
+import { damsText as text } from '#client/text/dams.ts';
+import { AppFrame } from '../app-frame.tsx';
+
+export function DamActivityPage() {
+  const { damId = '' } = useParams();
+  const { data: dam } = useSuspenseQuery(damQuery(damId));
+  const trail = [
+    { label: text.title, to: paths.dams },
+    { label: dam.name, to: paths.dam(dam.id) },
+    { label: text.activity },
+  ];
+  return (
+    <AppFrame trail={trail}>
+      <Page title={text.activityOf(dam.name)} heading={text.activity} lead={dam.name}>
+        <Panel title={text.activity} look="register">
+          <Suspense fallback={<Loading />}>
+            <ActivityTable damId={dam.id} />
+          </Suspense>
+        </Panel>
+      </Page>
+    </AppFrame>
+  );
+}

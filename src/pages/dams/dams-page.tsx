@@ -1,0 +1,53 @@
+import { Suspense } from 'react';
+import { Link, useSearchParams } from 'react-router-dom';
+import { ButtonLink } from '#client/components/button.tsx';
+import { Loading } from '#client/components/loading.tsx';
+import { Page } from '#client/components/page.tsx';
+import { Panel } from '#client/components/panel.tsx';
+import { DamList } from '#client/features/dams/components/dam-list.tsx';
+import { WaitingList } from '#client/features/dams/components/waiting-list.tsx';
+import { useSession } from '#client/features/session/hooks/use-session.ts';
+import { paths } from '#client/lib/paths.ts';
+import { damsText as text } from '#client/text/dams.ts';
+import { AppFrame } from '../app-frame.tsx';
+
+export function DamsPage() {
+  const session = useSession();
+  const [search] = useSearchParams();
+  const archived = search.get('show') === 'put-away';
+  const canCreate = session.can.includes('dam.create');
+  return (
+    <AppFrame trail={[{ label: text.title }]}>
+      <Page title={text.title} heading={text.yours}>
+        <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
+          <Panel
+            look="register"
+            className="self-start"
+            title={archived ? `${text.title}, ${text.putAwayMark}` : text.title}
+            action={
+              canCreate ? (
+                <ButtonLink look="main" to={paths.newDam}>
+                  {text.newDam}
+                </ButtonLink>
+              ) : null
+            }
+          >
+            <Suspense fallback={<Loading />}>
+              <DamList archived={archived} canCreate={canCreate} />
+            </Suspense>
+            <p className="m-0 px-3.5 py-2.5 text-sm">
+              <Link to={archived ? '?' : '?show=put-away'}>
+                {archived ? text.hidePutAway : text.showPutAway}
+              </Link>
+            </p>
+          </Panel>
+          <Panel title={text.waiting} className="self-start">
+            <Suspense fallback={<Loading />}>
+              <WaitingList />
+            </Suspense>
+          </Panel>
+        </div>
+      </Page>
+    </AppFrame>
+  );
+}

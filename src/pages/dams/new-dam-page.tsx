@@ -1,0 +1,38 @@
+import { useNavigate } from 'react-router-dom';
+import { useNotice } from '#client/components/notice.tsx';
+import { Page } from '#client/components/page.tsx';
+import { Panel } from '#client/components/panel.tsx';
+import { useCreateDam } from '#client/features/dams/api/dam-mutations.ts';
+import { DamForm } from '#client/features/dams/components/dam-form.tsx';
+import { paths } from '#client/lib/paths.ts';
+import { damsText as text } from '#client/text/dams.ts';
+import { AppFrame } from '../app-frame.tsx';
+
+export function NewDamPage() {
+  const create = useCreateDam();
+  const navigate = useNavigate();
+  const notice = useNotice();
+  return (
+    <AppFrame trail={[{ label: text.title, to: paths.dams }, { label: text.newDam }]}>
+      <Page title={text.newDam} heading={text.newDam} lead={text.newDamLead} narrow>
+        <Panel title={text.facts} look="register">
+          <div className="p-3.5">
+            <DamForm
+              error={create.error}
+              busy={create.isPending}
+              submitLabel={text.create}
+              onSubmit={(input) =>
+                create.mutate(input, {
+                  onSuccess: (dam) => {
+                    notice(text.created);
+                    void navigate(paths.damSettings(dam.id));
+                  },
+                })
+              }
+            />
+          </div>
+        </Panel>
+      </Page>
+    </AppFrame>
+  );
+}

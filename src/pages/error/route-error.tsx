@@ -1,0 +1,69 @@
+import { useQueryClient } from '@tanstack/react-query';
+import { useEffect } from 'react';
+import { useLocation, useNavigate, useRouteError } from 'react-router-dom';
+import { Button, ButtonLink } from '#client/components/button.tsx';
+import { RequestNumber } from '#client/components/problem-note.tsx';
+import { PublicLayout } from '#client/layouts/public-layout.tsx';
+import { ApiProblem } from '#client/lib/api-problem.ts';
+import { paths } from '#client/lib/paths.ts';
+import { onSignInMoment } from '#client/lib/sign-in-state.ts';
+import { problemText as text } from '#client/text/problems.ts';
+import { sessionText } from '#client/text/session.ts';
+import { NotFoundPage } from './not-found-page.tsx';
+
+/** What a page shows in place of itself when it could not be loaded or failed: what happened, what to do, the request number. */
+export function RouteError() {
+  const error = useRouteError();
+  const retry = useRetry();
+  useEffect(() => onSignInMoment((moment) => moment === 'signedIn' && retry()), [retry]);
+  if (isNotFound(error)) return <NotFoundPage />;
+  if (error instanceof ApiProblem && error.code === 'token-invalid')
+    return <Failed title={sessionText.linkInvalid} detail={error.message} error={error} retry={retry} />;
+  if (error instanceof ApiProblem)
+    return <Failed title={error.problem.title} detail={error.message} error={error} retry={retry} />;
+  return <Failed title={text.pageFailedTitle} detail={text.pageFailed} error={error} />;
+}
+
+const isNotFound = (error: unknown) =>
+  error instanceof ApiProblem
+    ? error.code === 'not-found'
+    : typeof error === 'object' && error !== null && 'status' in error && error.status === 404;
+
+/** Forgets what failed and comes to the same address again, which takes the error away. */
+function useRetry(): () => void {
+  const queryClient = useQueryClient();
+  const navigate = useNavigate();
+  const location = useLocation();
+  return () => {
+    queryClient.removeQueries({ predicate: (query) => query.state.status === 'error' });
+    void navigate(location, { replace: true });
+  };
+}
+
+interface FailedProps {
+  title: string;
+  detail: string;
+  error: unknown;
+  retry?: () => void;
+}
+
+function Failed({ title, detail, error, retry }: FailedProps) {
+  return (
+    <PublicLayout title={title}>
+      <p className="mt-0">{detail}</p>
+      <RequestNumber error={error} />
+      <div className="mt-4 flex flex-wrap gap-2">
+        {retry ? (
+          <Button look="main" onClick={retry}>
+            {text.tryAgain}
+          </Button>
+        ) : (
+          <Button look="main" onClick={() => window.location.reload()}>
+            {text.reload}
+          </Button>
+        )}
+        <ButtonLink to={paths.dams}>{text.toDams}</ButtonLink>
+      </div>
+    </PublicLayout>
+  );
+}

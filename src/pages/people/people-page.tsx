@@ -1,0 +1,31 @@
+import { Suspense } from 'react';
+import { Loading } from '#client/components/loading.tsx';
+import { Page } from '#client/components/page.tsx';
+import { Panel } from '#client/components/panel.tsx';
+import { InvitePersonForm } from '#client/features/people/components/invite-person-form.tsx';
+import { PeopleTable } from '#client/features/people/components/people-table.tsx';
+import { useSession } from '#client/features/session/hooks/use-session.ts';
+import { peopleText as text } from '#client/text/people.ts';
+import { AppFrame } from '../app-frame.tsx';
+
+export function PeoplePage() {
+  const { person } = useSession();
+  return (
+    <AppFrame trail={[{ label: text.title }]}>
+      <Page title={text.title} heading={text.title} lead={text.lead}>
+        <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
+          <Panel title={text.title} look="register" className="min-w-0 self-start">
+            <Suspense fallback={<Loading />}>
+              <PeopleTable ownPersonId={person?.id ?? ''} />
+            </Suspense>
+          </Panel>
+          <Panel title={text.invite} className="self-start">
+            <div className="p-3.5">
+              <InvitePersonForm />
+            </div>
+          </Panel>
+        </div>
+      </Page>
+    </AppFrame>
+  );
+}

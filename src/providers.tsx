@@ -1,0 +1,43 @@
+import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
+import { StrictMode, Suspense } from 'react';
+import type { createBrowserRouter } from 'react-router-dom';
+import { RouterProvider } from 'react-router-dom';
+import { Loading } from './components/loading.tsx';
+import { NoticeProvider } from './components/notice.tsx';
+import { ApiProblem } from './lib/api-problem.ts';
+
+const MAX_RETRIES = 2;
+
+/** Trying again helps only when nothing answered or the server was overloaded. */
+function isWorthRetrying(failures: number, error: unknown): boolean {
+  if (failures >= MAX_RETRIES) return false;
+  return error instanceof ApiProblem && (error.isNoConnection || [502, 503, 504].includes(error.status));
+}
+
+export function createQueryClient(): QueryClient {
+  return new QueryClient({
+    defaultOptions: {
+      queries: { staleTime: 10_000, retry: isWorthRetrying },
+      mutations: { retry: false },
+    },
+  });
+}
+
+interface ProvidersProps {
+  queryClient: QueryClient;
+  router: ReturnType<typeof createBrowserRouter>;
+}
+
+export function Providers({ queryClient, router }: ProvidersProps) {
+  return (
+    <StrictMode>
+      <QueryClientProvider client={queryClient}>
+        <NoticeProvider>
+          <Suspense fallback={<Loading />}>
+            <RouterProvider router={router} />
+          </Suspense>
+        </NoticeProvider>
+      </QueryClientProvider>
+    </StrictMode>
+  );
+}

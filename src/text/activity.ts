@@ -1,0 +1,9 @@
+export const activityText = {
+  none: 'Nothing has happened here yet.',
+  more: 'Show earlier activity',
+  somebody: 'The system',
+  when: 'When',
+  who: 'Who',
+  what: 'What',
+  caption: 'Activity, newest first',
+} as const;

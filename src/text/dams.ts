@@ -1,0 +1,98 @@
+import type { DamRole } from '#shared/contract/actions.ts';
+
+const ROLE_NAMES: Record<DamRole, string> = {
+  engineer: 'engineer',
+  reviewer: 'reviewer',
+  colleague: 'colleague',
+};
+const ROLE_TASKS: Record<DamRole, string> = {
+  engineer: 'uploads, calibrates, traces, sends for checking',
+  reviewer: 'comments, checks, accepts or returns',
+  colleague: 'reads and comments',
+};
+
+const plural = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
+const withArticle = (role: string) => `${/^[aeiou]/.test(role) ? 'an' : 'a'} ${role}`;
+
+export const damsText = {
+  title: 'Dams',
+  yours: 'Your dams',
+  dam: 'Dam',
+  fullSupply: 'Full supply level',
+  drawings: 'Drawings',
+  openNotes: 'Open notes',
+  yourPart: 'Your part',
+  newDam: 'New dam',
+  none: 'You have no part on any dam yet. Ask an engineer of your dam to add you.',
+  noneAdmin: 'There is no dam yet. Make the first one, then add its people.',
+  nonePutAway: 'No dam has been put away.',
+  showPutAway: 'Show what was put away',
+  hidePutAway: 'Show what is in use',
+  putAwayMark: 'put away',
+  waiting: 'Waiting for you',
+  nothingWaits: 'Nothing waits for you.',
+  role: (role: DamRole) => ROLE_NAMES[role],
+  roleTask: (role: DamRole) => ROLE_TASKS[role],
+  roles: (roles: readonly DamRole[]) => roles.map((role) => ROLE_NAMES[role]).join(', '),
+  youAre: (roles: readonly DamRole[]) =>
+    roles.length === 0
+      ? 'You have no part on this dam.'
+      : `You are ${roles.map((role) => withArticle(ROLE_NAMES[role])).join(' and ')} on this dam.`,
+  drawingCount: (count: number) => plural(count, 'drawing', 'drawings'),
+  openNoteCount: (count: number) => `${plural(count, 'note', 'notes')} open`,
+  levelUnset: 'not entered',
+  siUnits: 'SI units',
+  usUnits: 'US customary units',
+
+  newDamLead: 'The dam in whose units and to whose datum everything on it is read.',
+  name: 'Name of the dam',
+  unitSystem: 'Unit system',
+  si: 'SI: metres, kPa, kN/m³',
+  us: 'US customary: feet, psf, lb/ft³',
+  datum: 'Name of the vertical datum',
+  datumHint: 'As it stands behind the elevations on the drawings, such as LD for a local datum.',
+  fullSupplyHint: 'Leave it empty when it is not known.',
+  gammaW: 'Unit weight of water, γw',
+  gammaWHint: '9.81 kN/m³ or 62.4 lb/ft³ unless the water asks for another value.',
+  notANumber: 'This is not a number. Write it as 118.00 or 118,00.',
+  gammaPositive: 'The unit weight of water must be a number above zero.',
+  create: 'Make the dam',
+  created: 'The dam is made.',
+  unitsFixed: 'Nets already traced keep the units they were traced in.',
+
+  settings: 'Settings and people',
+  settingsOf: (name: string) => `${name}: settings and people`,
+  facts: 'The dam',
+  people: 'People',
+  person: 'Person',
+  parts: 'Parts',
+  state: 'State',
+  invited: 'invited, not yet accepted',
+  deactivated: 'deactivated',
+  you: 'you',
+  saveParts: 'Save parts',
+  partsOf: (name: string) => `Parts of ${name}`,
+  removePerson: 'Remove',
+  removeFrom: (name: string) => `Remove ${name} from this dam`,
+  removed: (name: string) => `${name} no longer has a part on this dam.`,
+  partsSaved: (name: string) => `The parts of ${name} are saved.`,
+  onePart: 'Choose at least one part, or remove the person.',
+  addPerson: 'Add a person',
+  addPersonLead: 'Somebody new gets an invitation by mail; somebody with an account gets the part at once.',
+  email: 'E-mail address',
+  invite: 'Send the invitation',
+  inviteSent: (email: string) => `${email} has been written to.`,
+  managePeople: 'Manage people',
+  noPeople: 'Nobody has a part on this dam yet.',
+  putAwayTitle: 'Put this dam away',
+  putAwayLead: 'It leaves the lists and takes no changes. Nothing is destroyed, and it can be brought back.',
+  putAwayDam: 'Put the dam away',
+  bringBackDam: 'Bring the dam back',
+  isPutAway: 'This dam was put away. It can be read, not changed.',
+  nameDone: 'The settings are saved.',
+  cannotManage: 'Engineers of this dam and administrators change its settings and people.',
+
+  activity: 'Activity',
+  activityOf: (name: string) => `${name}: activity`,
+  allActivity: 'All activity',
+} as const;
