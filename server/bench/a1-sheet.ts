@@ -35,6 +35,7 @@ const raw = { raw: { ...A1_PX, channels: 1 as const } };
 /** 1 bit, CCITT group 4, as plan scanners write it. */
 export async function a1GroupFour(copy: number): Promise<Buffer> {
   return sharp(await pixels(copy), { ...raw, limitInputPixels: false })
+    .toColourspace('b-w')
     .tiff({ compression: 'ccittfax4', bitdepth: 1, xres: 300 / 25.4, yres: 300 / 25.4 })
     .toBuffer();
 }

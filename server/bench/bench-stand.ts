@@ -17,9 +17,9 @@ export interface BenchStand {
   close(): Promise<void>;
 }
 
-/** The product as it is started for use, on a database and a storage folder that go away afterwards. */
-export async function openBenchStand(): Promise<BenchStand> {
-  await ensureClient(projectRoot);
+/** The product as it is started for use (its built pages when `pages` are looked at), on a database and a storage folder that go away afterwards. */
+export async function openBenchStand({ pages = false } = {}): Promise<BenchStand> {
+  if (pages) await ensureClient(projectRoot);
   const storageDir = mkdtempSync(path.join(os.tmpdir(), 'tracehead-bench-'));
   // As root the database runs as another system user, who has to get in.
   chmodSync(storageDir, 0o755);

@@ -59,7 +59,7 @@ export const firstLoad: Bench = {
   name: 'first-load',
   about: 'gzipped script of the sign-in page, beside a bare page with the same libraries',
   async run() {
-    const stand = await openBenchStand();
+    const stand = await openBenchStand({ pages: true });
     try {
       const kilobytes = [(await scriptOfSignIn(stand.address)) / 1000];
       // Sizes do not vary from run to run: one sample is all there is.
