@@ -19,11 +19,15 @@ export type HandReading = {
 
 /**
  * The strip in which a place lies: the one whose outline holds it, or the nearest whose outline passes within `slack`
- * (a point on the base of a structure lies on the traced line only as exactly as it was traced). Null outside all.
+ * (a point on the base of a structure lies on the traced line only as exactly as it was traced). Null outside all, and
+ * well inside two that overlap: then the lines contradict each other, and no figure is better than the first one.
  */
 export function stripAt(strips: readonly Strip[], at: Pair, slack: number): Strip | null {
-  const holding = strips.find((strip) => ringContains(strip.ring, at[0], at[1]));
-  if (holding) return holding;
+  const holding = strips.filter((strip) => ringContains(strip.ring, at[0], at[1]));
+  const wellInside = holding.filter((strip) => distanceToRing(strip.ring, at[0], at[1]) > slack);
+  if (wellInside.length > 1) return null;
+  const only = wellInside[0] ?? holding[0];
+  if (only) return only;
   let best: Strip | null = null;
   let nearest = slack;
   for (const strip of strips) {

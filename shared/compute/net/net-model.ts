@@ -112,7 +112,17 @@ function stripsOf(
     ),
   ]);
   return order.pairs
-    .map((pair) => stripBetween(stripLines.get(pair.before)!, stripLines.get(pair.after)!, pair, graph))
+    .map((pair) => {
+      const { before, after } = pair;
+      const others = equipotentials.filter(({ id }) => id !== before && id !== after);
+      return stripBetween(
+        stripLines.get(before)!,
+        stripLines.get(after)!,
+        pair,
+        graph,
+        others.map(({ id }) => stripLines.get(id)!),
+      );
+    })
     .filter((strip) => strip !== null);
 }
 

@@ -1,4 +1,4 @@
-import { type Ring, ringOf } from '#shared/compute/geometry/polygon.ts';
+import { type Ring, ringContains, ringOf } from '#shared/compute/geometry/polygon.ts';
 import {
   lengthOf,
   nearestOnPolyline,
@@ -37,19 +37,39 @@ export type Strip = {
 /** The longest way along carriers that still closes a strip, in lengths of its longer line. */
 const LONGEST_WAY = 4;
 
+/** Parts of a line's length at which it is asked whether it lies in a strip. */
+const PARTS_ASKED = [1, 2, 3, 4, 5, 6, 7].map((eighth) => eighth / 8);
+
 /**
  * The strip between two neighbouring head lines: one line, the piece of boundary between the feet, the next line
  * backwards, and the other end. A way along the carriers closes an end; where none leads from line to line the
- * straight join does. All in base-raster pixels. Null when the outline has no area.
+ * straight join does. A gap in a boundary can leave only a way round other head lines, which would give the strip
+ * their ground: then both ends are joined straight. All in base-raster pixels. Null when the outline has no area or
+ * still holds a line of `others`, so that nothing is read from it.
  */
 export function stripBetween(
   before: StripLine,
   after: StripLine,
   pair: OrderedPair,
   graph: CarrierGraph,
+  others: readonly StripLine[],
 ): Strip | null {
   const far = pair.sameDirection ? after : reversedLine(after);
   const limit = LONGEST_WAY * Math.max(lengthOf(before.shape), lengthOf(far.shape));
+  for (const longest of [limit, 0]) {
+    const strip = outlined(before, far, graph, longest);
+    if (strip && !others.some((line) => holdsPartOf(strip.ring, line.shape))) return strip;
+  }
+  return null;
+}
+
+/** Asked between the ends only: a foot may reach a tracing error's width into the ground beside it. */
+function holdsPartOf(ring: Ring, shape: Polyline): boolean {
+  const length = lengthOf(shape);
+  return PARTS_ASKED.some((part) => ringContains(ring, ...pointAlong(shape, part * length)));
+}
+
+function outlined(before: StripLine, far: StripLine, graph: CarrierGraph, limit: number): Strip | null {
   const start = closingWay(before, far, 'start', graph, limit);
   const end = closingWay(before, far, 'end', graph, limit);
   const beforeShape = bounded(before, start.beforeS, end.beforeS);
@@ -69,7 +89,7 @@ export function stripBetween(
       pointAlong(afterShape, lengthOf(afterShape)),
     ]);
   }
-  return { before: before.id, after: after.id, beforeShape, afterShape, ring, openJoins };
+  return { before: before.id, after: far.id, beforeShape, afterShape, ring, openJoins };
 }
 
 function reversedLine(line: StripLine): StripLine {
