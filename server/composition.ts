@@ -1,12 +1,17 @@
 import type { Logger } from 'pino';
-import type { DataSource } from 'typeorm';
 import type { AppDeps } from './app-deps.ts';
 import type { AppConfig } from './config/config.ts';
 import { createDataSource } from './entities/data-source.ts';
 import { systemClock } from './http/clock.ts';
-import type { JobsPort } from './jobs/jobs-port.ts';
+import { createRenderProcess } from './imaging/render-process.ts';
+import { createRenderDrawingHandler } from './jobs/handlers/render-drawing.ts';
+import type { JobHandlers } from './jobs/jobs-port.ts';
+import { createPgBossJobs } from './jobs/pg-boss-jobs.ts';
 import type { LivePort } from './live/live-port.ts';
+import { requeueRenderJobs } from './services/render-job-service.ts';
+import { readingDeps } from './services/service-deps.ts';
 import { createLocalDiskStorage } from './storage/local-disk-storage.ts';
+import { sweepLeftovers } from './storage/sweep-leftovers.ts';
 
 const APP_ROLE = 'tracehead_app';
 
@@ -20,15 +25,20 @@ export interface Product {
 
 /** Makes the concrete adapters and hands them on: the one place where ports meet what is behind them. */
 export async function compose(config: AppConfig, logger: Logger): Promise<Product> {
-  const db = await connect(config);
-  const jobs = noJobs();
+  const login = loginOf(config);
+  const db = await createDataSource(login).initialize();
+  const jobs = createPgBossJobs({ ...login, logger });
   const live = liveInProcess();
   const storage = createLocalDiskStorage(config.storageDir);
   const deps: AppDeps = { config, db, storage, jobs, live, clock: systemClock, logger };
   return {
     deps,
     async startWork() {
+      await sweepLeftovers(config.storageDir, systemClock.now());
       await live.start();
+      await jobs.start(jobHandlers(deps));
+      // What waited or was under way when the last process ended is taken up again.
+      await requeueRenderJobs(readingDeps(deps));
     },
     async stop(graceMs) {
       await jobs.stop(graceMs);
@@ -39,14 +49,18 @@ export async function compose(config: AppConfig, logger: Logger): Promise<Produc
 }
 
 /** With one login for both purposes the application's role is taken on connecting. */
-function connect(config: AppConfig): Promise<DataSource> {
-  const url = config.databaseAppUrl ?? config.databaseUrl ?? '';
-  const role = config.databaseAppUrl ? {} : { role: APP_ROLE };
-  return createDataSource({ url, ...role }).initialize();
+function loginOf(config: AppConfig): { url: string; role?: string } {
+  if (config.databaseAppUrl) return { url: config.databaseAppUrl };
+  return { url: config.databaseUrl ?? '', role: APP_ROLE };
 }
 
-function noJobs(): JobsPort {
-  return { async enqueue() {}, async start() {}, async stop() {} };
+function jobHandlers(deps: AppDeps): JobHandlers {
+  return {
+    'render-drawing': createRenderDrawingHandler(deps, () => createRenderProcess()),
+    'send-mail': async () => {
+      throw new Error('Mail is not wired yet.');
+    },
+  };
 }
 
 function liveInProcess(): LivePort {

@@ -6,6 +6,8 @@ import { compose } from './composition.ts';
 import { ConfigError, readConfig } from './config/config.ts';
 import { onStopAsked, orderlyStop, STOP_GRACE_MS } from './orderly-stop.ts';
 
+const LONGEST_REQUEST_MS = 60 * 60 * 1000;
+
 /** Tells the start script, when one is waiting, where the server listens or why it does not. */
 const report = (message: { address: string } | { fault: string }) => process.send?.(message);
 
@@ -13,7 +15,9 @@ async function main(): Promise<void> {
   const config = readConfig(process.env);
   const logger = pino({ level: config.logLevel });
   const product = await compose(config, logger);
-  const server = createServer(createApp(product.deps));
+  // Node's own limit for a whole request is five minutes and would cut a slow upload of a large scan; an upload
+  // that falls silent is ended by its route.
+  const server = createServer({ requestTimeout: LONGEST_REQUEST_MS }, createApp(product.deps));
   const stopServing = orderlyStop(server);
   await new Promise<void>((resolve, reject) => {
     server.once('error', reject);
