@@ -16,6 +16,7 @@ import { MemberTable } from '#client/features/dams/components/member-table.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { paths } from '#client/lib/paths.ts';
 import { commonText } from '#client/text/common.ts';
+import { damSettingsText as settings } from '#client/text/dam-settings.ts';
 import { damsText as text } from '#client/text/dams.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 import { AppFrame } from '../app-frame.tsx';
@@ -33,9 +34,9 @@ export function DamSettingsPage() {
   return (
     <AppFrame trail={trail}>
       <Page
-        title={text.settingsOf(dam.name)}
+        title={settings.settingsOf(dam.name)}
         heading={text.settings}
-        lead={canManage ? dam.name : text.cannotManage}
+        lead={canManage ? dam.name : settings.cannotManage}
       >
         <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_400px]">
           <div className="flex min-w-0 flex-col gap-4">
@@ -45,7 +46,7 @@ export function DamSettingsPage() {
               </Suspense>
             </Panel>
             {canManage ? (
-              <Panel title={text.addPerson}>
+              <Panel title={settings.addPerson}>
                 <div className="p-3.5">
                   <InviteMemberForm damId={dam.id} />
                 </div>
@@ -67,7 +68,7 @@ function FactsPanel({ dam }: { dam: DamDto }) {
   const notice = useNotice();
   const canEdit = dam.can.includes('dam.edit') && dam.archivedAt === null;
   return (
-    <Panel title={text.facts}>
+    <Panel title={settings.facts}>
       <div className="p-3.5">
         {canEdit ? (
           <DamForm
@@ -75,7 +76,7 @@ function FactsPanel({ dam }: { dam: DamDto }) {
             error={edit.error}
             busy={edit.isPending}
             submitLabel={commonText.save}
-            onSubmit={(input) => edit.mutate(input, { onSuccess: () => notice(text.nameDone) })}
+            onSubmit={(input) => edit.mutate(input, { onSuccess: () => notice(settings.nameDone) })}
           />
         ) : (
           <DamFacts dam={dam} />
@@ -89,12 +90,12 @@ function PutAwayPanel({ dam }: { dam: DamDto }) {
   const archive = useArchiveDam(dam.id);
   const isAway = dam.archivedAt !== null;
   return (
-    <Panel title={isAway ? text.bringBackDam : text.putAwayTitle}>
+    <Panel title={isAway ? settings.bringBackDam : settings.putAwayTitle}>
       <div className="flex flex-col items-start gap-3 p-3.5">
-        <p className="m-0">{isAway ? text.isPutAway : text.putAwayLead}</p>
+        <p className="m-0">{isAway ? text.isPutAway : settings.putAwayLead}</p>
         <ProblemNote error={archive.error} />
         <Button busy={archive.isPending} onClick={() => archive.mutate(!isAway)}>
-          {isAway ? text.bringBackDam : text.putAwayDam}
+          {isAway ? settings.bringBackDam : settings.putAwayDam}
         </Button>
       </div>
     </Panel>

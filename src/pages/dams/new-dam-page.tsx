@@ -5,6 +5,7 @@ import { Panel } from '#client/components/panel.tsx';
 import { useCreateDam } from '#client/features/dams/api/dam-mutations.ts';
 import { DamForm } from '#client/features/dams/components/dam-form.tsx';
 import { paths } from '#client/lib/paths.ts';
+import { damSettingsText as settings } from '#client/text/dam-settings.ts';
 import { damsText as text } from '#client/text/dams.ts';
 import { AppFrame } from '../app-frame.tsx';
 
@@ -14,17 +15,17 @@ export function NewDamPage() {
   const notice = useNotice();
   return (
     <AppFrame trail={[{ label: text.title, to: paths.dams }, { label: text.newDam }]}>
-      <Page title={text.newDam} heading={text.newDam} lead={text.newDamLead} narrow>
-        <Panel title={text.facts} look="register">
+      <Page title={text.newDam} heading={text.newDam} lead={settings.newDamLead} narrow>
+        <Panel title={settings.facts} look="register">
           <div className="p-3.5">
             <DamForm
               error={create.error}
               busy={create.isPending}
-              submitLabel={text.create}
+              submitLabel={settings.create}
               onSubmit={(input) =>
                 create.mutate(input, {
                   onSuccess: (dam) => {
-                    notice(text.created);
+                    notice(settings.created);
                     void navigate(paths.damSettings(dam.id));
                   },
                 })

@@ -1,10 +1,14 @@
-import { Suspense, useState } from 'react';
+import { lazy, Suspense, useEffect, useState } from 'react';
 import { Navigate, Outlet, useLocation } from 'react-router-dom';
 import { Loading } from '#client/components/loading.tsx';
-import { SignInAgain } from '#client/features/session/components/sign-in-again.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { useSessionEnd } from '#client/features/session/hooks/use-session-end.ts';
 import { signInAndBack } from '#client/lib/paths.ts';
+
+const loadSignInAgain = () => import('#client/features/session/components/sign-in-again.tsx');
+const SignInAgain = lazy(async () => ({ default: (await loadSignInAgain()).SignInAgain }));
+/** Not with the first load, but soon after it: when the session ends, the server may hold a newer client already. */
+const FETCH_AHEAD_MS = 4000;
 
 /** Everything behind the sign-in. A session that ends while a page is open is renewed over the page. */
 export function SignedIn() {
@@ -13,13 +17,17 @@ export function SignedIn() {
   const ended = useSessionEnd();
   const [person, setPerson] = useState(session.person);
   if (session.person && session.person.id !== person?.id) setPerson(session.person);
+  useEffect(() => {
+    const timer = setTimeout(() => void loadSignInAgain(), FETCH_AHEAD_MS);
+    return () => clearTimeout(timer);
+  }, []);
   if (!person) return <Navigate to={signInAndBack(location)} replace />;
   return (
     <>
       <Suspense fallback={<Loading />}>
         <Outlet />
       </Suspense>
-      {ended || !session.person ? <SignInAgain person={person} /> : null}
+      <Suspense>{ended || !session.person ? <SignInAgain person={person} /> : null}</Suspense>
     </>
   );
 }

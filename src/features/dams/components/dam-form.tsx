@@ -5,6 +5,7 @@ import { ProblemNote } from '#client/components/problem-note.tsx';
 import { fieldMessage } from '#client/lib/api-problem.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { commonText } from '#client/text/common.ts';
+import { damSettingsText as settings } from '#client/text/dam-settings.ts';
 import { damsText as text } from '#client/text/dams.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
@@ -34,9 +35,9 @@ const typedFrom = (dam: DamDto | undefined): Typed => ({
 function readTyped(typed: Typed): { input: DamInput } | { field: keyof Typed; message: string } {
   const level = typed.fullSupplyLevel.trim() === '' ? null : parseTypedNumber(typed.fullSupplyLevel);
   if (level === null && typed.fullSupplyLevel.trim() !== '')
-    return { field: 'fullSupplyLevel', message: text.notANumber };
+    return { field: 'fullSupplyLevel', message: settings.notANumber };
   const gammaW = parseTypedNumber(typed.gammaW);
-  if (gammaW === null || gammaW <= 0) return { field: 'gammaW', message: text.gammaPositive };
+  if (gammaW === null || gammaW <= 0) return { field: 'gammaW', message: settings.gammaPositive };
   const { name, unitSystem, datum } = typed;
   return { input: { name, unitSystem, datum, fullSupplyLevel: level, gammaW } };
 }
@@ -71,7 +72,7 @@ export function DamForm({ dam, error, busy, submitLabel, onSubmit }: DamFormProp
     <form onSubmit={submit} className="flex flex-col gap-3">
       <ProblemNote error={error} />
       <TextField
-        label={text.name}
+        label={settings.name}
         required
         maxLength={200}
         error={errorOf('name')}
@@ -79,17 +80,17 @@ export function DamForm({ dam, error, busy, submitLabel, onSubmit }: DamFormProp
         onChange={(event) => set({ name: event.target.value })}
       />
       <SelectField
-        label={text.unitSystem}
-        hint={dam ? text.unitsFixed : null}
+        label={settings.unitSystem}
+        hint={dam ? settings.unitsFixed : null}
         value={typed.unitSystem}
         onChange={(event) => changeSystem(event.target.value === 'US' ? 'US' : 'SI')}
       >
-        <option value="SI">{text.si}</option>
-        <option value="US">{text.us}</option>
+        <option value="SI">{settings.si}</option>
+        <option value="US">{settings.us}</option>
       </SelectField>
       <TextField
-        label={text.datum}
-        hint={text.datumHint}
+        label={settings.datum}
+        hint={settings.datumHint}
         maxLength={80}
         error={errorOf('datum')}
         value={typed.datum}
@@ -97,15 +98,15 @@ export function DamForm({ dam, error, busy, submitLabel, onSubmit }: DamFormProp
       />
       <NumberField
         label={text.fullSupply}
-        hint={text.fullSupplyHint}
+        hint={settings.fullSupplyHint}
         unit={`${lengthUnit} ${typed.datum}`.trim()}
         error={errorOf('fullSupplyLevel')}
         value={typed.fullSupplyLevel}
         onChange={(event) => set({ fullSupplyLevel: event.target.value })}
       />
       <NumberField
-        label={text.gammaW}
-        hint={text.gammaWHint}
+        label={settings.gammaW}
+        hint={settings.gammaWHint}
         unit={gammaUnit(typed)}
         error={errorOf('gammaW')}
         value={typed.gammaW}

@@ -5,7 +5,7 @@ import { useNotice } from '#client/components/notice.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { fieldMessage } from '#client/lib/api-problem.ts';
 import { commonText } from '#client/text/common.ts';
-import { damsText as text } from '#client/text/dams.ts';
+import { damSettingsText as settings } from '#client/text/dam-settings.ts';
 import type { DamRole } from '#shared/contract/actions.ts';
 import { useInviteMember } from '../api/dam-mutations.ts';
 import { RoleChecks } from './role-checks.tsx';
@@ -17,7 +17,7 @@ export function InviteMemberForm({ damId }: { damId: string }) {
   const invite = useInviteMember(damId);
   const notice = useNotice();
   const invited = () => {
-    notice(text.inviteSent(email));
+    notice(settings.inviteSent(email));
     setEmail('');
     setRoles([]);
   };
@@ -28,10 +28,10 @@ export function InviteMemberForm({ damId }: { damId: string }) {
   };
   return (
     <form onSubmit={submit} className="flex flex-col gap-3">
-      <p className="m-0 text-ink-2">{text.addPersonLead}</p>
+      <p className="m-0 text-ink-2">{settings.addPersonLead}</p>
       <ProblemNote error={invite.error} />
       <TextField
-        label={text.email}
+        label={settings.email}
         type="email"
         required
         autoComplete="off"
@@ -39,15 +39,15 @@ export function InviteMemberForm({ damId }: { damId: string }) {
         value={email}
         onChange={(event) => setEmail(event.target.value)}
       />
-      <RoleChecks legend={text.parts} roles={roles} onChange={setRoles} explained />
+      <RoleChecks legend={settings.parts} roles={roles} onChange={setRoles} explained />
       {isMissing && roles.length === 0 ? (
         <p role="alert" className="m-0 text-sm text-wrong">
-          {text.onePart}
+          {settings.onePart}
         </p>
       ) : null}
       <div>
         <Button type="submit" look="main" busy={invite.isPending} busyLabel={commonText.sending}>
-          {text.invite}
+          {settings.invite}
         </Button>
       </div>
     </form>

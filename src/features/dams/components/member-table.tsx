@@ -5,6 +5,7 @@ import { useNotice } from '#client/components/notice.tsx';
 import { Empty } from '#client/components/panel.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { Cell, HeadCell, Table } from '#client/components/table.tsx';
+import { damSettingsText as settings } from '#client/text/dam-settings.ts';
 import { damsText as text } from '#client/text/dams.ts';
 import type { MemberDto } from '#shared/contract/dams.ts';
 import { useRemoveMember, useSetRoles } from '../api/dam-mutations.ts';
@@ -25,11 +26,11 @@ export function MemberTable({ damId, ownPersonId, canManage }: MemberTableProps)
     <Table caption={text.people}>
       <thead>
         <tr>
-          <HeadCell>{text.person}</HeadCell>
-          <HeadCell>{text.parts}</HeadCell>
+          <HeadCell>{settings.person}</HeadCell>
+          <HeadCell>{settings.parts}</HeadCell>
           {canManage ? (
             <HeadCell>
-              <span className="sr-only">{text.removePerson}</span>
+              <span className="sr-only">{settings.removePerson}</span>
             </HeadCell>
           ) : null}
         </tr>
@@ -61,16 +62,16 @@ function MemberRow({ damId, member, isSelf, canManage }: MemberRowProps) {
   const name = member.person.name || member.email;
   const notice = useNotice();
   const remove = useRemoveMember(damId);
-  const removed = () => notice(text.removed(name));
+  const removed = () => notice(settings.removed(name));
   return (
     <tr>
       <Cell className="align-top">
         <span className="font-semibold">{name}</span>
-        {isSelf ? ` (${text.you})` : ''}
+        {isSelf ? ` (${settings.you})` : ''}
         <span className="block text-sm text-ink-2">
           {member.email}
           {member.state === 'invited' ? `, ${text.invited}` : ''}
-          {member.state === 'deactivated' ? `, ${text.deactivated}` : ''}
+          {member.state === 'deactivated' ? `, ${settings.deactivated}` : ''}
         </span>
         <ProblemNote error={remove.error} />
       </Cell>
@@ -81,11 +82,11 @@ function MemberRow({ damId, member, isSelf, canManage }: MemberRowProps) {
         <Cell className="text-right align-top">
           <Button
             look="quiet"
-            aria-label={text.removeFrom(name)}
+            aria-label={settings.removeFrom(name)}
             busy={remove.isPending}
             onClick={() => remove.mutate(member.person.id, { onSuccess: removed })}
           >
-            {text.removePerson}
+            {settings.removePerson}
           </Button>
         </Cell>
       ) : null}
@@ -101,16 +102,16 @@ function RoleEditor({ damId, member, name }: { damId: string; member: MemberDto;
   const save = () =>
     setSaved.mutate(
       { personId: member.person.id, roles },
-      { onSuccess: () => notice(text.partsSaved(name)) },
+      { onSuccess: () => notice(settings.partsSaved(name)) },
     );
   return (
     <>
-      <RoleChecks legend={text.partsOf(name)} roles={roles} onChange={setRoles} />
+      <RoleChecks legend={settings.partsOf(name)} roles={roles} onChange={setRoles} />
       <ProblemNote error={setSaved.error} />
-      {isChanged && roles.length === 0 ? <p className="m-0 text-sm text-wrong">{text.onePart}</p> : null}
+      {isChanged && roles.length === 0 ? <p className="m-0 text-sm text-wrong">{settings.onePart}</p> : null}
       {isChanged && roles.length > 0 ? (
         <Button className="mt-1.5" busy={setSaved.isPending} onClick={save}>
-          {text.saveParts}
+          {settings.saveParts}
         </Button>
       ) : null}
     </>
