@@ -1,0 +1,101 @@
+import { useQuery } from '@tanstack/react-query';
+import { type FormEvent, useState } from 'react';
+import { v7 as uuidv7 } from 'uuid';
+import { Button } from '#client/components/button.tsx';
+import { Actions, Dialog } from '#client/components/dialog.tsx';
+import { TextArea } from '#client/components/field.tsx';
+import { ProblemNote } from '#client/components/problem-note.tsx';
+import { commonText } from '#client/text/common.ts';
+import { sendingText as text } from '#client/text/revisions.ts';
+import { MAX_NOTE_LENGTH } from '#shared/contract/limits.ts';
+import type { RevisionSummary, SendingDto } from '#shared/contract/revisions.ts';
+import { useSendForChecking } from '../api/revision-mutations.ts';
+import { sendingQuery } from '../api/revision-queries.ts';
+import { ReviewerChoice } from './reviewer-choice.tsx';
+import { StillOpen } from './still-open.tsx';
+
+interface SendDialogProps {
+  netId: string;
+  /** Newest change of the server's that the sender has on the sheet. */
+  changeNumber: number;
+  onClose: () => void;
+  onSent: (revision: RevisionSummary) => void;
+}
+
+/** Freezes the net as a revision and mails its link to a reviewer, after saying what is still open on it. */
+export function SendDialog(props: SendDialogProps) {
+  const sending = useQuery(sendingQuery(props.netId));
+  const title = sending.data ? text.title(sending.data.nextLabel) : text.button;
+  return (
+    <Dialog title={title} onClose={props.onClose}>
+      {sending.data ? <SendForm {...props} sending={sending.data} /> : null}
+      {sending.isPending ? <p className="shown-late m-0 text-ink-2">{text.loading}</p> : null}
+      <ProblemNote error={sending.error} />
+      {sending.data ? null : (
+        <Actions>
+          <Button onClick={props.onClose}>{commonText.cancel}</Button>
+        </Actions>
+      )}
+    </Dialog>
+  );
+}
+
+function SendForm({
+  netId,
+  changeNumber,
+  onClose,
+  onSent,
+  sending,
+}: SendDialogProps & { sending: SendingDto }) {
+  const free = sending.reviewers.filter((reviewer) => !reviewer.drew);
+  const [reviewerId, setReviewerId] = useState(free.length === 1 ? (free[0]?.person.id ?? '') : '');
+  const [message, setMessage] = useState('');
+  const [fault, setFault] = useState<string | null>(null);
+  const [id] = useState(() => uuidv7());
+  const send = useSendForChecking(netId);
+  const submit = (event: FormEvent) => {
+    event.preventDefault();
+    if (send.isPending) return;
+    if (reviewerId === '') setFault(text.chooseReviewer);
+    else send.mutate({ id, reviewerId, message, changeNumber }, { onSuccess: onSent });
+  };
+  const refused = sending.refusal !== null || free.length === 0;
+  return (
+    <form onSubmit={submit} className="flex flex-col gap-3">
+      <p className="m-0 text-ink-2">{text.lead}</p>
+      {sending.refusal ? (
+        <p className="m-0 border-l-[3px] border-wrong pl-3 text-wrong">{sending.refusal}</p>
+      ) : null}
+      <StillOpen sending={sending} />
+      <ReviewerChoice
+        reviewers={sending.reviewers}
+        chosen={reviewerId}
+        fault={fault}
+        onChoose={(next) => {
+          setReviewerId(next);
+          setFault(null);
+        }}
+      />
+      <TextArea
+        label={text.message}
+        hint={text.messageHint}
+        maxLength={MAX_NOTE_LENGTH}
+        value={message}
+        onChange={(event) => setMessage(event.target.value)}
+      />
+      <ProblemNote error={send.error} />
+      <Actions>
+        <Button
+          type="submit"
+          look="main"
+          disabled={refused}
+          busy={send.isPending}
+          busyLabel={commonText.sending}
+        >
+          {text.send}
+        </Button>
+        <Button onClick={onClose}>{commonText.cancel}</Button>
+      </Actions>
+    </form>
+  );
+}
