@@ -1,0 +1,156 @@
+import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
+import type { SheetDto } from '#shared/contract/drawings.ts';
+import type { DeskState, DeskStore } from '../model/desk-state.ts';
+import { lineChoiceOf } from '../model/tool-choice.ts';
+import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
+import type { ViewStore } from '../model/view-store.ts';
+import { balloonCentre, buildScene, type NoteBalloon } from '../render/build-scene.ts';
+import { overlayScene } from '../render/overlay-scene.ts';
+import { createSheetRenderer, type SheetRenderer } from '../render/sheet-renderer.ts';
+import { createToolHost, type HostView, type ToolHost } from '../tools/tool-host.ts';
+import type { Balloon, Modifiers } from '../tools/tool-types.ts';
+import { deskKey, isTyping, sheetKey } from './desk-keys.ts';
+import { attachGestures } from './pointer-gestures.ts';
+
+const KEYBOARD_REACH_PX = 8;
+
+export type SheetControllerOptions = {
+  readonly element: HTMLElement;
+  /** Under everything else in the element: the canvases go in here. */
+  readonly layers: HTMLElement;
+  readonly sheet: SheetDto;
+  readonly store: DeskStore;
+  readonly views: ViewStore;
+  notes(): readonly NoteBalloon[];
+  /** Place being set with the magnified view, or null. */
+  onFollow(at: SheetPx | null): void;
+  onPanning(panning: boolean): void;
+};
+
+export type SheetController = {
+  readonly renderer: SheetRenderer;
+  readonly host: ToolHost;
+  /** To be called when the notes have changed. */
+  refresh(): void;
+  act(type: 'finish' | 'takeBack' | 'cancel'): void;
+  destroy(): void;
+};
+
+/** Holds a sheet view together outside of React: stores to scenes, pointers and keys to tools. */
+export function createSheetController(options: SheetControllerOptions): SheetController {
+  const { element, sheet, store, views } = options;
+  const renderer = createSheetRenderer(options.layers, sheet);
+  const host = createToolHost(store);
+  let pointer: { at: SheetPx; keys: Modifiers; view: HostView } | null = null;
+  let overlay: ToolOverlay = NO_OVERLAY;
+  let sceneDue = false;
+
+  const zoom = () => views.getState().view.zoom;
+  const balloons = (): Balloon[] =>
+    options.notes().map((note) => ({ id: note.id, at: sheetPx(...balloonCentre(note, zoom())) }));
+  const keyView = (): HostView => ({ zoom: zoom(), reachPx: KEYBOARD_REACH_PX, balloons: balloons() });
+
+  function showScene(): void {
+    sceneDue = false;
+    const state = store.getState();
+    renderer.showBase(
+      buildScene({
+        document: state.document,
+        preview: state.preview,
+        reading: state.reading,
+        selection: state.selection,
+        draftId: state.draft?.lineId ?? null,
+        hiddenKinds: state.hiddenKinds,
+        notes: options.notes(),
+        map: host.map(),
+        readOnly: state.readOnly,
+        zoom: zoom(),
+      }),
+    );
+    showOverlay();
+  }
+
+  /** One scene for all that changes in the same turn. */
+  function dueScene(): void {
+    if (sceneDue) return;
+    sceneDue = true;
+    queueMicrotask(() => sceneDue && showScene());
+  }
+
+  function showOverlay(): void {
+    const { tool, boundaryKind } = store.getState();
+    overlay =
+      pointer === null
+        ? NO_OVERLAY
+        : host.overlay(pointer.at, pointer.keys, { ...pointer.view, zoom: zoom() });
+    renderer.showOverlay(overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null));
+    options.onFollow(overlay.magnify && pointer !== null ? (overlay.snap?.at ?? pointer.at) : null);
+  }
+
+  function followPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void {
+    pointer = at === null ? null : { at, keys, view };
+    store.setPointer(at === null ? null : [at[0], at[1]]);
+    showOverlay();
+  }
+
+  function key(event: KeyboardEvent): void {
+    if (event.defaultPrevented || isTyping(event.target)) return;
+    const inSheet = event.target === element;
+    const used =
+      (inSheet && sheetKey(event, { store, views, host, hostView: keyView })) ||
+      deskKey(event, { store, host });
+    if (used) event.preventDefault();
+  }
+
+  const sizes = new ResizeObserver(() => views.resize(element.clientWidth, element.clientHeight));
+  sizes.observe(element);
+  views.resize(element.clientWidth, element.clientHeight);
+  const endings = [
+    attachGestures({
+      element,
+      views,
+      host,
+      balloons,
+      onPointer: followPointer,
+      onPanning: options.onPanning,
+    }),
+    store.subscribe((state, before) => looksDiffer(state, before) && dueScene()),
+    store.onLookAt((at) => views.lookAt(sheetPx(...at))),
+    views.subscribe((state, before) => {
+      renderer.setView(state.view);
+      if (state.view.zoom !== before.view.zoom) dueScene();
+    }),
+  ];
+  element.ownerDocument.addEventListener('keydown', key);
+  if (views.getState().view.widthPx > 0) renderer.setView(views.getState().view);
+  showScene();
+
+  return {
+    renderer,
+    host,
+    refresh: dueScene,
+    act: (type) => host.handle({ type }, keyView()),
+    destroy() {
+      sceneDue = false;
+      sizes.disconnect();
+      for (const end of endings) end();
+      element.ownerDocument.removeEventListener('keydown', key);
+      store.setPointer(null);
+      renderer.destroy();
+    },
+  };
+}
+
+/** True when something that is drawn has changed; the pointer alone does not count. */
+function looksDiffer(a: DeskState, b: DeskState): boolean {
+  return (
+    a.document !== b.document ||
+    a.preview !== b.preview ||
+    a.reading !== b.reading ||
+    a.selection !== b.selection ||
+    a.draft !== b.draft ||
+    a.tool !== b.tool ||
+    a.hiddenKinds !== b.hiddenKinds ||
+    a.readOnly !== b.readOnly
+  );
+}

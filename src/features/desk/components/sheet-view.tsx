@@ -1,0 +1,104 @@
+import { useEffect, useId, useRef, useState } from 'react';
+import { useStore } from 'zustand';
+import { classNames } from '#client/components/class-names.ts';
+import { deskViewText as text } from '#client/text/desk-view.ts';
+import type { SheetPx } from '#shared/compute/frames.ts';
+import type { SheetDto } from '#shared/contract/drawings.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+import type { ToolId } from '../model/tool-choice.ts';
+import { createViewStore } from '../model/view-store.ts';
+import type { SheetFrame } from '../model/viewport.ts';
+import type { NoteBalloon } from '../render/build-scene.ts';
+import { DraftActions } from './draft-actions.tsx';
+import { Magnifier } from './magnifier.tsx';
+import { PointerReadout } from './pointer-readout.tsx';
+import { createSheetController, type SheetController } from './sheet-controller.ts';
+import { ZoomBar } from './zoom-bar.tsx';
+
+type SheetViewProps = {
+  store: DeskStore;
+  sheet: SheetDto;
+  /** The section's part of the sheet, shown when fitted; null = the whole sheet. */
+  frame: SheetFrame | null;
+  notes: readonly NoteBalloon[];
+  /** Accessible name: which section of which drawing is shown. */
+  label: string;
+  className?: string;
+};
+
+/**
+ * The sheet with its traces: pans, zooms and feeds the tool in hand. A read-only store shows it without tools. Another
+ * sheet needs another `key`, because the view and its tiles belong to one sheet.
+ */
+export function SheetView({ store, sheet, frame, notes, label, className }: SheetViewProps) {
+  const element = useRef<HTMLDivElement>(null);
+  const layers = useRef<HTMLDivElement>(null);
+  const shownNotes = useRef(notes);
+  const [views] = useState(() => createViewStore(sheet, frame));
+  const [controller, setController] = useState<SheetController | null>(null);
+  const [follow, setFollow] = useState<SheetPx | null>(null);
+  const [panning, setPanning] = useState(false);
+  const tool = useStore(store, (state) => state.tool);
+  const helpId = useId();
+
+  useEffect(() => {
+    if (element.current === null || layers.current === null) return;
+    const made = createSheetController({
+      element: element.current,
+      layers: layers.current,
+      sheet,
+      store,
+      views,
+      notes: () => shownNotes.current,
+      onFollow: setFollow,
+      onPanning: setPanning,
+    });
+    setController(made);
+    return () => {
+      setController(null);
+      made.destroy();
+    };
+  }, [sheet, store, views]);
+
+  useEffect(() => {
+    shownNotes.current = notes;
+    controller?.refresh();
+  }, [notes, controller]);
+
+  return (
+    <div
+      ref={element}
+      role="application"
+      aria-label={label}
+      aria-describedby={helpId}
+      tabIndex={controller === null ? -1 : 0}
+      data-panning={panning || undefined}
+      className={classNames(
+        'relative touch-none select-none overflow-hidden bg-desk focus-visible:outline-offset-[-3px]',
+        panning ? 'cursor-grabbing' : cursorFor(tool),
+        className,
+      )}
+    >
+      <div ref={layers} className="absolute inset-0" />
+      <span id={helpId} className="sr-only">
+        {text.keysHelp}
+      </span>
+      <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 [&>*]:pointer-events-auto">
+        <PointerReadout store={store} />
+        <div className="ml-auto">
+          <ZoomBar views={views} />
+        </div>
+      </div>
+      <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
+        <DraftActions store={store} onAction={(action) => controller?.act(action)} />
+        <div className="ml-auto">
+          {controller && <Magnifier store={store} renderer={controller.renderer} follow={follow} />}
+        </div>
+      </div>
+    </div>
+  );
+}
+
+function cursorFor(tool: ToolId): string {
+  return tool === 'select' ? 'cursor-default' : 'cursor-crosshair';
+}

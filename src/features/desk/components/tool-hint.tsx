@@ -1,0 +1,46 @@
+import { useStore } from 'zustand';
+import { deskPaletteText as text } from '#client/text/desk-palette.ts';
+import { deskToolText } from '#client/text/desk-tools.ts';
+import { fixedText, plainText } from '#shared/text/number-text.ts';
+import { elevationUnit } from '#shared/text/unit-text.ts';
+import type { DeskState, DeskStore } from '../model/desk-state.ts';
+
+/** What the tool in hand does now, in sentences. */
+export function ToolHint({ store }: { store: DeskStore }) {
+  const sentences = useStore(store, hintOf);
+  return (
+    <div className="mx-4 mt-3 min-h-[92px] text-sm text-ink-2">
+      {sentences.split('\n').map((sentence) => (
+        <p key={sentence} className="m-0 mb-1.5">
+          {sentence}
+        </p>
+      ))}
+    </div>
+  );
+}
+
+/** The hint as lines of one text, so that it is drawn again only when it says something else. */
+function hintOf(state: DeskState): string {
+  if (state.readOnly) return text.readOnly;
+  const drawn = state.draft === null ? undefined : state.document.entities[state.draft.lineId]?.value;
+  if (drawn?.kind === 'line') {
+    return `${text.tracing(deskToolText.lineKind(drawn.line), drawn.points.length)}\n${text.tracingKeys}`;
+  }
+  return chosenLineHint(state) ?? text.hints[state.tool];
+}
+
+function chosenLineHint(state: DeskState): string | null {
+  const id =
+    state.selection.kind === 'line' && state.selection.ids.length === 1 ? state.selection.ids[0] : undefined;
+  const line = id === undefined ? undefined : state.document.entities[id]?.value;
+  if (state.tool !== 'select' || line?.kind !== 'line') return null;
+  if (!line.finished) return text.unfinishedLine(deskToolText.lineKind(line.line));
+  const read = state.reading?.lines.find((found) => found.id === id);
+  const facts = [text.chosenLine(deskToolText.lineWord(line))];
+  if (read?.drops != null) facts.push(text.chosenDrops(plainText(read.drops)));
+  if (read?.head != null) {
+    const unit = elevationUnit(state.document.unitSystem, state.document.datum);
+    facts.push(text.chosenHead(fixedText(read.head, 2), unit));
+  }
+  return `${facts.join(' ')}\n${text.chosenKeys}`;
+}

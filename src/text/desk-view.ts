@@ -1,0 +1,44 @@
+import type { UnitSystem } from '#shared/contract/document.ts';
+import { fixedText } from '#shared/text/number-text.ts';
+import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+
+export type PointerWords = {
+  readonly offset: number;
+  readonly elevation: number;
+  readonly side: 'upstream' | 'downstream' | null;
+  readonly decimals: number;
+  readonly unitSystem: UnitSystem;
+  readonly datum: string;
+};
+
+/** Words on and around the sheet. */
+export const deskViewText = {
+  sheetRole: 'drawing',
+  keysHelp:
+    'Arrow keys move the sheet, plus and minus zoom, zero shows it whole. Letters choose tools: K known points, E equipotential, F flow line, P phreatic line, B boundary, R reading point, N note. Enter finishes a line, Backspace takes back its last point, Escape cancels.',
+  zoomIn: 'Zoom in',
+  zoomOut: 'Zoom out',
+  fit: 'Fit',
+  fitTitle: 'Show the whole section',
+  zoomBar: 'Zoom',
+  zoomShown: (zoom: number) => {
+    const percent = zoom * 100;
+    return `${percent < 9.95 ? percent.toFixed(1) : percent.toFixed(0)} %`;
+  },
+  pixels: (x: number, y: number) => `x ${fixedText(x, 1)}, y ${fixedText(y, 1)} px`,
+  offset: (words: PointerWords) => {
+    const { length } = unitNames(words.unitSystem);
+    if (words.side === null) return `Offset ${fixedText(words.offset, words.decimals)} ${length}`;
+    return `Offset ${fixedText(Math.abs(words.offset), words.decimals)} ${length} ${words.side}`;
+  },
+  elevation: (words: PointerWords) =>
+    `Elevation ${fixedText(words.elevation, words.decimals)} ${elevationUnit(words.unitSystem, words.datum)}`,
+  magnifier:
+    'Magnified eight times. Drag to place to a tenth of a pixel, or use the arrow keys; with Shift a whole pixel.',
+  magnified: '8 ×',
+  finishLine: 'Finish line',
+  takeBackPoint: 'Take back point',
+  cancelLine: 'Cancel line',
+  dismiss: 'Dismiss',
+  lineActions: 'Line being drawn',
+} as const;
