@@ -5,8 +5,11 @@ import type { LiveEvent } from '#shared/contract/live.ts';
 export interface LivePort {
   /** Announces in the transaction of the change: nobody hears of it unless the change is committed. */
   publish(manager: EntityManager, event: LiveEvent): Promise<void>;
-  /** Calls `listener` for every announced event until the returned function is called. */
-  subscribe(listener: (event: LiveEvent) => void): () => void;
+  /**
+   * Calls `listener` for every announced event until the returned function is called. `onGap` is called when
+   * events may have been missed, because the channel was down for a while: whoever listens has to look again.
+   */
+  subscribe(listener: (event: LiveEvent) => void, onGap?: () => void): () => void;
   start(): Promise<void>;
   stop(): Promise<void>;
 }

@@ -2,9 +2,11 @@ import type { RouteRecord } from '#server/http/route-record.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
 import { drawingRoutes } from './drawing-routes.ts';
+import { liveRoutes } from './live-routes.ts';
 import { netRoutes } from './net-routes.ts';
 import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
+import { revisionRoutes } from './revision-routes.ts';
 import { scheduleRoutes } from './schedule-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
 import { sessionRoutes } from './session-routes.ts';
@@ -14,10 +16,12 @@ export const routes: readonly RouteRecord[] = [
   ...sessionRoutes,
   ...peopleRoutes,
   ...damRoutes,
+  ...liveRoutes,
   ...drawingRoutes,
   ...sectionRoutes,
   ...netRoutes,
   ...commandRoutes,
   ...scheduleRoutes,
   ...noteRoutes,
+  ...revisionRoutes,
 ];

@@ -42,6 +42,12 @@ export class Caller {
     await this.open();
   }
 
+  /** The cookies as a header, for requests that supertest cannot make, such as a stream that does not end. */
+  cookieHeader(): string {
+    const everything = { domain: '127.0.0.1', path: '/', secure: false, script: false };
+    return this.#agent.jar.getCookies(everything).toValueString();
+  }
+
   #write(test: Test, body?: object): Test {
     const withToken = test.set('X-CSRF-Token', this.csrfToken);
     return body ? withToken.send(body) : withToken;
