@@ -1,9 +1,8 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
-import { Suspense } from 'react';
 import { useParams } from 'react-router-dom';
-import { Loading } from '#client/components/loading.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
 import { ActivityTable } from '#client/features/activity/components/activity-list.tsx';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
 import { paths } from '#client/lib/paths.ts';
@@ -22,9 +21,9 @@ export function DamActivityPage() {
     <AppFrame trail={trail}>
       <Page title={text.activityOf(dam.name)} heading={text.activity} lead={dam.name}>
         <Panel title={text.activity} look="register">
-          <Suspense fallback={<Loading />}>
+          <Part>
             <ActivityTable damId={dam.id} />
-          </Suspense>
+          </Part>
         </Panel>
       </Page>
     </AppFrame>

@@ -1,10 +1,9 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
-import { Suspense } from 'react';
 import { Link, useParams, useSearchParams } from 'react-router-dom';
 import { ButtonLink } from '#client/components/button.tsx';
-import { Loading } from '#client/components/loading.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
 import { RecentActivity } from '#client/features/activity/components/activity-list.tsx';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
 import { DamFacts } from '#client/features/dams/components/dam-facts.tsx';
@@ -48,14 +47,14 @@ function SidePanels({ dam }: { dam: DamDto }) {
   return (
     <div className="flex flex-col gap-4">
       <Panel title={text.waiting}>
-        <Suspense fallback={<Loading />}>
+        <Part>
           <WaitingList damId={dam.id} />
-        </Suspense>
+        </Part>
       </Panel>
       <Panel title={text.people}>
-        <Suspense fallback={<Loading />}>
+        <Part>
           <PeopleList damId={dam.id} />
-        </Suspense>
+        </Part>
         {dam.can.includes('dam.manageMembers') ? (
           <p className="m-0 border-t border-rule-2 px-3.5 py-2 text-sm">
             <Link to={paths.damSettings(dam.id)}>{text.managePeople}</Link>
@@ -63,9 +62,9 @@ function SidePanels({ dam }: { dam: DamDto }) {
         ) : null}
       </Panel>
       <Panel title={text.activity}>
-        <Suspense fallback={<Loading />}>
+        <Part>
           <RecentActivity damId={dam.id} />
-        </Suspense>
+        </Part>
         <p className="m-0 border-t border-rule-2 px-3.5 py-2 text-sm">
           <Link to={paths.damActivity(dam.id)}>{text.allActivity}</Link>
         </p>

@@ -1,11 +1,10 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
-import { Suspense } from 'react';
 import { useParams } from 'react-router-dom';
 import { Button } from '#client/components/button.tsx';
-import { Loading } from '#client/components/loading.tsx';
 import { useNotice } from '#client/components/notice.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { useArchiveDam, useEditDam } from '#client/features/dams/api/dam-mutations.ts';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
@@ -41,9 +40,9 @@ export function DamSettingsPage() {
         <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_400px]">
           <div className="flex min-w-0 flex-col gap-4">
             <Panel title={text.people} look="register">
-              <Suspense fallback={<Loading />}>
+              <Part>
                 <MemberTable damId={dam.id} ownPersonId={person?.id ?? ''} canManage={canManage} />
-              </Suspense>
+              </Part>
             </Panel>
             {canManage ? (
               <Panel title={settings.addPerson}>

@@ -1,7 +1,6 @@
-import { Suspense } from 'react';
 import { Link } from 'react-router-dom';
-import { Loading } from '#client/components/loading.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
 import { DrawingRegister } from '#client/features/drawings/components/drawing-register.tsx';
 import { UploadButtons } from '#client/features/drawings/components/upload-buttons.tsx';
 import { UploadList } from '#client/features/drawings/components/upload-list.tsx';
@@ -25,9 +24,9 @@ export function DrawingsPanel({ dam, archived }: { dam: DamDto; archived: boolea
       action={canUpload ? <UploadButtons onFiles={takeFiles} /> : null}
     >
       <UploadList uploads={uploads} />
-      <Suspense fallback={<Loading />}>
+      <Part>
         <DrawingRegister damId={dam.id} archived={archived} canUpload={canUpload} />
-      </Suspense>
+      </Part>
       {canUpload ? (
         <p className="mx-3.5 my-3 border-[1.5px] border-dashed border-rule p-3.5 text-center text-ink-2">
           {text.dropHint}

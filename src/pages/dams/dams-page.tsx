@@ -1,9 +1,8 @@
-import { Suspense } from 'react';
 import { Link, useSearchParams } from 'react-router-dom';
 import { ButtonLink } from '#client/components/button.tsx';
-import { Loading } from '#client/components/loading.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
 import { DamList } from '#client/features/dams/components/dam-list.tsx';
 import { WaitingList } from '#client/features/dams/components/waiting-list.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
@@ -32,9 +31,9 @@ export function DamsPage() {
               ) : null
             }
           >
-            <Suspense fallback={<Loading />}>
+            <Part>
               <DamList archived={archived} canCreate={canCreate} />
-            </Suspense>
+            </Part>
             <p className="m-0 px-3.5 py-2.5 text-sm">
               <Link to={archived ? '?' : '?show=put-away'}>
                 {archived ? text.hidePutAway : text.showPutAway}
@@ -42,9 +41,9 @@ export function DamsPage() {
             </p>
           </Panel>
           <Panel title={text.waiting} className="self-start">
-            <Suspense fallback={<Loading />}>
+            <Part>
               <WaitingList />
-            </Suspense>
+            </Part>
           </Panel>
         </div>
       </Page>

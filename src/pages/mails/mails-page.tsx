@@ -1,7 +1,6 @@
-import { Suspense } from 'react';
-import { Loading } from '#client/components/loading.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
 import { MailTable } from '#client/features/mails/components/mail-table.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { mailsText as text } from '#client/text/mails.ts';
@@ -17,9 +16,9 @@ export function MailsPage() {
         lead={session.outboxReadable ? text.leadOutbox : text.lead}
       >
         <Panel title={text.title} look="register">
-          <Suspense fallback={<Loading />}>
+          <Part>
             <MailTable />
-          </Suspense>
+          </Part>
         </Panel>
       </Page>
     </AppFrame>

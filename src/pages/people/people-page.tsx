@@ -1,7 +1,6 @@
-import { Suspense } from 'react';
-import { Loading } from '#client/components/loading.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
 import { InvitePersonForm } from '#client/features/people/components/invite-person-form.tsx';
 import { PeopleTable } from '#client/features/people/components/people-table.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
@@ -15,9 +14,9 @@ export function PeoplePage() {
       <Page title={text.title} heading={text.title} lead={text.lead}>
         <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
           <Panel title={text.title} look="register" className="min-w-0 self-start">
-            <Suspense fallback={<Loading />}>
+            <Part>
               <PeopleTable ownPersonId={person?.id ?? ''} />
-            </Suspense>
+            </Part>
           </Panel>
           <Panel title={text.invite} className="self-start">
             <div className="p-3.5">
