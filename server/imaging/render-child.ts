@@ -1,10 +1,8 @@
 import { prepareDecoder } from './image-source.ts';
 import { probeImage } from './probe-image.ts';
-import { probePdf } from './probe-pdf.ts';
 import { RenderRefusal } from './refusal.ts';
 import { renderImage } from './render-image.ts';
 import { collectConsole } from './render-log.ts';
-import { renderPdf } from './render-pdf.ts';
 import type { ProbeResult, RenderAnswer, RenderOrder } from './render-types.ts';
 import { sniffFile } from './sniff.ts';
 
@@ -20,16 +18,28 @@ function answer(message: RenderAnswer): void {
   if (process.connected) process.send?.(message);
 }
 
+/** Loaded when the first PDF comes: it takes longer than drawing a small scan. */
+async function pdfPart() {
+  const [{ probePdf }, { renderPdf }] = await Promise.all([
+    import('./probe-pdf.ts'),
+    import('./render-pdf.ts'),
+  ]);
+  return { probePdf, renderPdf };
+}
+
 async function probe(file: string): Promise<ProbeResult> {
   const kind = await sniffFile(file);
-  return { kind, pages: kind === 'pdf' ? await probePdf(file) : await probeImage(file, kind) };
+  return {
+    kind,
+    pages: kind === 'pdf' ? await (await pdfPart()).probePdf(file) : await probeImage(file, kind),
+  };
 }
 
 async function obey(order: RenderOrder): Promise<RenderAnswer> {
   const { id } = order;
   if (order.kind === 'probe') return { id, kind: 'probed', result: await probe(order.file) };
   const onProgress = (share: number) => answer({ id, kind: 'progress', share });
-  const render = order.request.kind === 'pdf' ? renderPdf : renderImage;
+  const render = order.request.kind === 'pdf' ? (await pdfPart()).renderPdf : renderImage;
   return { id, kind: 'rendered', result: await render(order.request, onProgress) };
 }
 
