@@ -178,8 +178,15 @@ function linesRead(model: NetModel, heads: NetHeads): LineReading[] {
   ];
   return ids.map((id) => {
     const line = heads.byId.get(id);
-    return line === undefined
-      ? unordered(id)
-      : { id, drops: line.drops, head: line.head, source: line.source };
+    if (line !== undefined) return { id, drops: line.drops, head: line.head, source: line.source };
+    return numberedByPlace(model, id);
   });
+}
+
+/** While the count does not stand, a line is numbered by its place along the flow and has no head yet. */
+function numberedByPlace(model: NetModel, id: string): LineReading {
+  const place = model.order.place.get(id);
+  const isEquipotential = model.equipotentials.some((line) => line.id === id);
+  if (!isEquipotential || place === undefined) return unordered(id);
+  return { id, drops: place, head: null, source: 'counted' };
 }

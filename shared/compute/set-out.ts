@@ -83,6 +83,10 @@ function withMap(
   const { dpi } = document.sheet;
   const impliedScale =
     dpi === null ? null : (unitsPerPx * metresPerLengthUnit(document.unitSystem) * dpi) / METRES_PER_INCH;
+  const figures = [residual, impliedScale, ...residuals.flatMap((each) => [each.offset, each.elevation])];
+  if (!figures.every((figure) => figure === null || Number.isFinite(figure))) {
+    return withoutMap('refused', tooLarge());
+  }
   const findings = scaleFindings(impliedScale, statedScale);
   return {
     reading: {
@@ -98,6 +102,15 @@ function withMap(
     similarity,
     findings,
   };
+}
+
+function tooLarge(): Finding {
+  return makeFinding(
+    'wrong',
+    'setOutTooLarge',
+    'The typed values of the known points are too large to be worked out. Check them.',
+    { cell: 'scale' },
+  );
 }
 
 function residualsOf(document: FlowNetDocument, similarity: Similarity, fitPoints: number) {

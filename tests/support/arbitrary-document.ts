@@ -1,0 +1,138 @@
+import fc from 'fast-check';
+import type { DocumentEntity, FlowNetDocument, LineKind } from '#shared/contract/document.ts';
+import { entityIdOf, exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
+import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
+
+const KINDS: LineKind[] = [
+  'equipotential',
+  'flowLine',
+  'phreaticLine',
+  'impervious',
+  'soilBoundary',
+  'ground',
+  'submergedFace',
+  'outflowFace',
+  'drain',
+];
+
+/** Any finite number that the schema admits, ordinary ones more often than monsters. */
+const anyNumber = fc.oneof(
+  { weight: 6, arbitrary: fc.integer({ min: -5, max: 20 }).map((value) => value * 50) },
+  { weight: 3, arbitrary: fc.double({ min: -1e4, max: 1e4, noNaN: true }) },
+  { weight: 1, arbitrary: fc.double({ noNaN: true, noDefaultInfinity: true }) },
+);
+const positive = fc.oneof(
+  fc.double({ min: 0.01, max: 100, noNaN: true }),
+  fc.double({ min: Number.MIN_VALUE, max: Number.MAX_VALUE, noNaN: true, noDefaultInfinity: true }),
+);
+const place = fc.tuple(anyNumber, anyNumber);
+const maybe = <T>(arbitrary: fc.Arbitrary<T>) => fc.option(arbitrary, { nil: null });
+
+const knownPoint = fc.record({
+  kind: fc.constant('knownPoint' as const),
+  name: fc.string({ maxLength: 10 }),
+  at: place,
+  offset: maybe(anyNumber),
+  elevation: maybe(anyNumber),
+  use: fc.constantFrom('fit' as const, 'check' as const),
+});
+
+const line = fc.record({
+  kind: fc.constant('line' as const),
+  line: fc.constantFrom(...KINDS),
+  name: fc.string({ maxLength: 10 }),
+  points: fc.array(place, { maxLength: 8 }),
+  finished: fc.boolean(),
+  water: maybe(fc.constantFrom('headwater' as const, 'tailwater' as const)),
+  head: maybe(anyNumber),
+  drops: maybe(anyNumber),
+});
+
+const readingPoint = fc.record({
+  kind: fc.constant('readingPoint' as const),
+  name: fc.string({ maxLength: 10 }),
+  place: fc.oneof(
+    fc.record({ on: fc.constant('sheet' as const), at: place }),
+    fc.record({ on: fc.constant('section' as const), offset: anyNumber, elevation: anyNumber }),
+  ),
+  order: anyNumber,
+});
+
+const singles: fc.Arbitrary<DocumentEntity>[] = [
+  fc.record({
+    kind: fc.constant('setOut' as const),
+    method: fc.constantFrom('points' as const, 'distance' as const),
+    distance: maybe(anyNumber),
+    level: fc.constantFrom('line' as const, 'sheet' as const),
+    offsetsGrow: maybe(fc.constantFrom('left' as const, 'right' as const)),
+    upstream: maybe(fc.constantFrom('left' as const, 'right' as const)),
+    upQuarterTurns: maybe(fc.constantFrom(0 as const, 1 as const, 2 as const, 3 as const)),
+    statedScale: maybe(anyNumber),
+  }),
+  fc.record({
+    kind: fc.constant('waterLevels' as const),
+    headwater: maybe(anyNumber),
+    tailwater: maybe(anyNumber),
+    gammaW: positive,
+    source: fc.constant(''),
+  }),
+  fc.record({
+    kind: fc.constant('permeability' as const),
+    k: maybe(positive),
+    unit: fc.constantFrom('m/s' as const, 'ft/year' as const),
+    factor: maybe(fc.double({ min: 1, max: 1e6, noNaN: true })),
+    source: fc.constant(''),
+  }),
+  fc.record({
+    kind: fc.constant('netCount' as const),
+    drops: maybe(positive),
+    channels: maybe(positive),
+    cellRatio: positive,
+    tracingAccuracyPx: fc.oneof(fc.constant(0), positive),
+    knownPointAccuracyPx: fc.oneof(fc.constant(0), positive),
+  }),
+];
+
+function documentOf(values: readonly DocumentEntity[], unitSystem: 'SI' | 'US'): FlowNetDocument {
+  return {
+    format: 'tracehead/flow-net',
+    version: 1,
+    id: entityIdOf(0xabcd),
+    name: '',
+    unitSystem,
+    datum: '',
+    sheet: { widthPx: 1000, heightPx: 800, dpi: 300 },
+    entities: Object.fromEntries(
+      values.map((value, i) => [entityIdOf(i + 1), { id: entityIdOf(i + 1), version: 1, value }]),
+    ),
+  };
+}
+
+/** A document of any entities at all, most of them nonsense together. */
+const nonsense = fc
+  .tuple(
+    fc.array(fc.oneof(knownPoint, line, line, line, readingPoint), { maxLength: 25 }),
+    fc.tuple(...singles),
+    fc.constantFrom('SI' as const, 'US' as const),
+  )
+  .map(([entities, single, system]) => documentOf([...entities, ...single], system));
+
+/** An exact net in which some entities are replaced by nonsense: nearly right is where code breaks. */
+const damaged = fc
+  .tuple(
+    fc.constantFrom(...EXACT_NETS),
+    fc.array(fc.tuple(fc.nat(200), fc.oneof(knownPoint, line, readingPoint, ...singles)), { maxLength: 3 }),
+    fc.array(readingPoint, { maxLength: 3 }),
+  )
+  .map(([{ net, pxPerUnit }, swaps, points]) => {
+    const values = Object.values(exactNetDocument(net, { pxPerUnit, spacingPx: 60 }).entities).map(
+      (entity) => entity.value,
+    );
+    for (const [at, value] of swaps) values[at % values.length] = value;
+    return documentOf([...values, ...points], 'SI');
+  });
+
+/** Any document that the schema admits. */
+export function arbitraryDocument(): fc.Arbitrary<FlowNetDocument> {
+  return fc.oneof(nonsense, damaged);
+}
