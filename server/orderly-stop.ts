@@ -1,4 +1,5 @@
 import type { Server, ServerResponse } from 'node:http';
+import type { Socket } from 'node:net';
 
 /** Long enough for an upload that is nearly done, short enough for a supervisor that waits. */
 export const STOP_GRACE_MS = 20_000;
@@ -8,28 +9,39 @@ export const STOP_GRACE_MS = 20_000;
  * which would never end by themselves, lets other requests finish within `graceMs`, and then cuts what is left.
  */
 export function orderlyStop(server: Server): (graceMs: number) => Promise<void> {
-  const streams = followStreams(server);
+  const { sockets, responses } = followTraffic(server);
   return async (graceMs) => {
     const closed = new Promise<void>((resolve) => server.close(() => resolve()));
-    for (const stream of streams) if (isEventStream(stream)) stream.end();
-    server.closeIdleConnections();
+    for (const response of responses) {
+      // The head said "keep-alive" before anybody knew; the connection goes with its last answer.
+      response.once('close', () => setImmediate(() => server.closeIdleConnections()));
+      if (isEventStream(response)) response.end();
+    }
+    const busy = new Set([...responses].map((response) => response.req.socket));
+    // Browsers open connections in advance; Node counts one that never carried a request as not idle.
+    for (const socket of sockets) if (!busy.has(socket)) socket.destroy();
     const timer = setTimeout(() => server.closeAllConnections(), graceMs);
     await closed;
     clearTimeout(timer);
   };
 }
 
-function followStreams(server: Server): Set<ServerResponse> {
-  const open = new Set<ServerResponse>();
-  server.on('request', (_req, res: ServerResponse) => {
-    open.add(res);
-    res.once('close', () => open.delete(res));
+function followTraffic(server: Server): { sockets: Set<Socket>; responses: Set<ServerResponse> } {
+  const sockets = new Set<Socket>();
+  const responses = new Set<ServerResponse>();
+  server.on('connection', (socket) => {
+    sockets.add(socket);
+    socket.once('close', () => sockets.delete(socket));
   });
-  return open;
+  server.on('request', (_request, response: ServerResponse) => {
+    responses.add(response);
+    response.once('close', () => responses.delete(response));
+  });
+  return { sockets, responses };
 }
 
-const isEventStream = (res: ServerResponse) =>
-  String(res.getHeader('content-type') ?? '').startsWith('text/event-stream');
+const isEventStream = (response: ServerResponse) =>
+  String(response.getHeader('content-type') ?? '').startsWith('text/event-stream');
 
 /** Calls `stop` once, at the first signal, or when the process that started this one has gone. */
 export function onStopAsked(stop: () => Promise<void>): void {
