@@ -3,6 +3,7 @@ import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
 import { drawingRoutes } from './drawing-routes.ts';
 import { liveRoutes } from './live-routes.ts';
+import { mailRoutes } from './mail-routes.ts';
 import { netRoutes } from './net-routes.ts';
 import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
@@ -17,6 +18,7 @@ export const routes: readonly RouteRecord[] = [
   ...peopleRoutes,
   ...damRoutes,
   ...liveRoutes,
+  ...mailRoutes,
   ...drawingRoutes,
   ...sectionRoutes,
   ...netRoutes,

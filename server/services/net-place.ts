@@ -40,11 +40,13 @@ export async function placeOfNet(manager: EntityManager, netId: string): Promise
 }
 
 /**
- * What is put away is kept as it is, and so is everything in it. Commands say so with 422, since their 409 carries a
- * result.
- * @throws AppError conflict naming the outermost thing that has to be brought back first
+ * What says that something is put away, naming the outermost thing that has to be brought back first; null when
+ * nothing is. What is put away is kept as it is, and so is everything in it.
  */
-export function refusePutAway(place: SheetPlace & Partial<NetPlace>, status: 409 | 422 = 409): void {
+export function putAwayRefusal(
+  place: SheetPlace & Partial<NetPlace>,
+  status: 409 | 422 = 409,
+): AppError | null {
   const away = (
     [
       ['dam', place.dam],
@@ -53,13 +55,22 @@ export function refusePutAway(place: SheetPlace & Partial<NetPlace>, status: 409
       ['net', place.net],
     ] as const
   ).find(([, thing]) => thing?.archivedAt);
-  if (!away) return;
-  throw new AppError(
+  if (!away) return null;
+  return new AppError(
     'conflict',
     status,
     'This has been put away',
     `The ${away[0]} has been put away. Bring it back before you change anything in it.`,
   );
+}
+
+/**
+ * Refuses changes of what is put away. Commands say so with 422, since their 409 carries a result.
+ * @throws AppError conflict
+ */
+export function refusePutAway(place: SheetPlace & Partial<NetPlace>, status: 409 | 422 = 409): void {
+  const refusal = putAwayRefusal(place, status);
+  if (refusal) throw refusal;
 }
 
 /** "Section B–B" for a section named "B–B"; a name that already says so is left alone. */

@@ -20,7 +20,8 @@ export async function scheduleOf(manager: EntityManager, netId: string): Promise
   return readingOf(manager, await placeOfNet(manager, netId));
 }
 
-function readingOf(manager: EntityManager, place: NetPlace): Promise<NetReading> {
+/** The reading of a net as it stands, kept from the last time when nothing changed. */
+export function readingOf(manager: EntityManager, place: NetPlace): Promise<NetReading> {
   const { net, dam } = place;
   // Whatever the reading depends on besides the entities is in the key as well.
   const key = JSON.stringify([net.id, net.changeNumber, net.name, net.unitSystem, dam.datum]);

@@ -1,0 +1,86 @@
+import { type EntityManager, IsNull } from 'typeorm';
+import { DecisionEntity, RevisionEntity } from '#server/entities/ledger-entity.ts';
+import { NoteEntity } from '#server/entities/note-entity.ts';
+import { type AppError, conflict, unprocessable } from '#server/errors/app-error.ts';
+import type { PersonRef } from '#shared/contract/common.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+import type { SendingDto } from '#shared/contract/revisions.ts';
+import { drawersOfNet } from './net-drawers.ts';
+import { type NetPlace, placeOfNet, putAwayRefusal } from './net-place.ts';
+import { revisionLabel } from './revision-label.ts';
+import { readingOf } from './schedule-queries.ts';
+
+export interface Reviewer extends PersonRef {
+  email: string;
+}
+
+/** The dam's reviewers who can sign in, by name. */
+export function reviewersOfDam(manager: EntityManager, damId: string): Promise<Reviewer[]> {
+  return manager.query(
+    `SELECT p.id, p.name, p.email FROM membership m JOIN person p ON p.id = m.person_id
+     WHERE m.dam_id = $1 AND 'reviewer' = ANY(m.roles)
+       AND p.deactivated_at IS NULL AND p.password_hash IS NOT NULL
+     ORDER BY p.name, p.id`,
+    [damId],
+  );
+}
+
+/** The newest revision of a net; null when none was sent. */
+export function newestRevision(manager: EntityManager, netId: string): Promise<RevisionEntity | null> {
+  return manager.findOne(RevisionEntity, { where: { netId }, order: { number: 'DESC' } });
+}
+
+/**
+ * What stands in the way of sending the net as it is, whoever sends it to whom; null when nothing does. A revision
+ * that still waits for a reviewer who can decide is not sent a second time unchanged.
+ */
+export async function sendingRefusal(
+  manager: EntityManager,
+  place: NetPlace,
+  reading: NetReading,
+  newest: RevisionEntity | null,
+  reviewers: readonly Reviewer[],
+): Promise<AppError | null> {
+  const away = putAwayRefusal(place);
+  if (away) return away;
+  if (reading.state === 'unfinished') return unfinished(reading);
+  if (!newest || newest.changeNumber !== place.net.changeNumber) return null;
+  if (await manager.existsBy(DecisionEntity, { revisionId: newest.id })) return null;
+  const reviewer = reviewers.find((each) => each.id === newest.reviewerId);
+  if (!reviewer) return null;
+  return conflict(
+    'conflict',
+    'This has been sent already',
+    `The net as it stands has been sent to ${reviewer.name} as revision ${newest.label}. Wait for the decision, or change the net and send it again.`,
+  );
+}
+
+function unfinished({ findings }: NetReading): AppError {
+  const first = findings.find(({ weight }) => weight === 'missing' || weight === 'wrong');
+  return unprocessable(
+    'net-unfinished',
+    'The net is unfinished',
+    `The net is unfinished and gives no figures, so it cannot be checked. ${first?.text ?? ''}`.trim(),
+  );
+}
+
+/** What to know before sending for checking. @throws AppError not-found */
+export async function sendingOf(manager: EntityManager, netId: string, actorId: string): Promise<SendingDto> {
+  const place = await placeOfNet(manager, netId);
+  const reading = await readingOf(manager, place);
+  const newest = await newestRevision(manager, netId);
+  const reviewers = await reviewersOfDam(manager, place.dam.id);
+  const drew = new Set([actorId, ...(await drawersOfNet(manager, netId)).map((person) => person.id)]);
+  const refusal = await sendingRefusal(manager, place, reading, newest, reviewers);
+  return {
+    reviewers: reviewers.map(({ id, name, email }) => ({
+      person: { id, name },
+      email,
+      drew: drew.has(id),
+    })),
+    findings: reading.findings,
+    openNotes: await manager.countBy(NoteEntity, { netId, closedAt: IsNull() }),
+    refusal: refusal?.detail ?? null,
+    nextLabel: revisionLabel((newest?.number ?? 0) + 1),
+  };
+}

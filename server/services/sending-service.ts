@@ -1,0 +1,157 @@
+import type * as z from 'zod/mini';
+import { RevisionEntity } from '#server/entities/ledger-entity.ts';
+import { AppError, conflict, invalidInput } from '#server/errors/app-error.ts';
+import type { Actor } from '#server/http/route-record.ts';
+import { sentForCheckingMail } from '#server/mail/templates/checking-mails.ts';
+import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
+import { readNet } from '#shared/compute/read-net.ts';
+import type { PersonRef } from '#shared/contract/common.ts';
+import type { RevisionPayload, RevisionSummary, sendInput } from '#shared/contract/revisions.ts';
+import { revisionFacts, scheduleFigures } from './checking-letters.ts';
+import { writeEvent } from './event-writer.ts';
+import { queueMail } from './mail-service.ts';
+import { readDocument } from './net-document.ts';
+import { drawersOfNet } from './net-drawers.ts';
+import { lockNet } from './net-locks.ts';
+import { type NetPlace, placeOfNet, sectionTitle } from './net-place.ts';
+import { refuseTakenId } from './new-id.ts';
+import { revisionLabel } from './revision-label.ts';
+import { freezePayload } from './revision-payload.ts';
+import { revisionSummaryOf } from './revision-queries.ts';
+import { newestRevision, type Reviewer, reviewersOfDam, sendingRefusal } from './sending-queries.ts';
+import type { ServiceDeps } from './service-deps.ts';
+
+type SendInput = z.output<typeof sendInput>;
+export type SendingDeps = Pick<ServiceDeps, 'manager' | 'clock' | 'live' | 'jobs' | 'config'>;
+
+/**
+ * Freezes a net as a revision and tells its reviewer. Runs in a transaction of the caller under the net's lock: the
+ * revision, its mail and its event exist together or not at all, and two senders follow one another.
+ */
+export function createSendingService(deps: SendingDeps) {
+  const { manager, clock, live, config } = deps;
+
+  async function send(netId: string, input: SendInput, actor: Actor): Promise<RevisionSummary> {
+    const { changeNumber } = await lockNet(manager, netId);
+    const isRepeat = await manager.existsBy(RevisionEntity, { id: input.id, netId, sentBy: actor.id });
+    if (isRepeat) return revisionSummaryOf(manager, input.id);
+    await refuseTakenId(manager, RevisionEntity, input.id, 'revision');
+    if (changeNumber !== input.changeNumber) throw changedMeanwhile(changeNumber);
+
+    const place = await placeOfNet(manager, netId);
+    const document = await readDocument(manager, place);
+    const reading = readNet(document);
+    const previous = await newestRevision(manager, netId);
+    const reviewers = await reviewersOfDam(manager, place.dam.id);
+    const refusal = await sendingRefusal(manager, place, reading, previous, reviewers);
+    if (refusal) throw refusal;
+    const drawnBy = await drawersOfNet(manager, netId);
+    const reviewer = chooseReviewer(reviewers, input.reviewerId, drawnBy, actor);
+    const payload: RevisionPayload = {
+      ...placeFacts(place),
+      payloadVersion: 1,
+      revisionId: input.id,
+      label: revisionLabel((previous?.number ?? 0) + 1),
+      document,
+      reading,
+      engineVersion: ENGINE_VERSION,
+      drawnBy,
+      sentBy: { id: actor.id, name: actor.name },
+      reviewer: { id: reviewer.id, name: reviewer.name },
+      sentAt: clock.now().toISOString(),
+      message: wellFormed(input.message),
+      previousHash: previous?.payloadHash ?? null,
+    };
+    await insertRevision(payload, (previous?.number ?? 0) + 1, changeNumber);
+    await tell(payload, place, reviewer, actor);
+    return revisionSummaryOf(manager, input.id);
+  }
+
+  async function insertRevision(payload: RevisionPayload, number: number, changeNumber: number) {
+    const { text, hash } = freezePayload(payload);
+    await manager.insert(RevisionEntity, {
+      id: payload.revisionId,
+      netId: payload.netId,
+      number,
+      label: payload.label,
+      changeNumber: String(changeNumber),
+      payload: text,
+      payloadHash: hash,
+      previousHash: payload.previousHash,
+      engineVersion: payload.engineVersion,
+      drawnBy: payload.drawnBy.map((person) => person.id),
+      sentBy: payload.sentBy.id,
+      reviewerId: payload.reviewer.id,
+      message: payload.message,
+      sentAt: new Date(payload.sentAt),
+    });
+  }
+
+  async function tell(payload: RevisionPayload, place: NetPlace, reviewer: Reviewer, actor: Actor) {
+    const { revisionId, netId, label, message } = payload;
+    const letter = sentForCheckingMail({
+      ...revisionFacts(payload),
+      sentBy: actor.name,
+      message,
+      figures: scheduleFigures(payload),
+      url: `${config.publicUrl}/revisions/${revisionId}`,
+    });
+    await queueMail(deps, { ...letter, personId: reviewer.id, to: reviewer.email });
+    const damId = place.dam.id;
+    await writeEvent(manager, {
+      damId,
+      drawingId: place.drawing.id,
+      netId,
+      personId: actor.id,
+      type: 'revision.sent',
+      text: `sent revision ${label} of ${sectionTitle(place.section)}, ${place.net.name}, to ${reviewer.name} for checking`,
+      detail: { revisionId },
+    });
+    await live.publish(manager, { type: 'revisions', damId, netId });
+  }
+
+  return { send };
+}
+
+function placeFacts({ net, section, sheet, drawing, dam }: NetPlace) {
+  const { id, number, title, revision, sha256 } = drawing;
+  return {
+    netId: net.id,
+    netName: net.name,
+    dam: { id: dam.id, name: dam.name, datum: dam.datum },
+    drawing: { id, number, title, revision, sha256 },
+    section: { id: section.id, name: section.name, chainage: section.chainage },
+    sheet: { id: sheet.id, pageNumber: sheet.pageNumber },
+  };
+}
+
+function chooseReviewer(
+  reviewers: readonly Reviewer[],
+  reviewerId: string,
+  drawnBy: readonly PersonRef[],
+  actor: Actor,
+): Reviewer {
+  const reviewer = reviewers.find(({ id }) => id === reviewerId);
+  if (!reviewer)
+    throw invalidInput([
+      { path: 'reviewerId', message: 'This person is no reviewer of the dam, or can no longer sign in.' },
+    ]);
+  if (reviewer.id !== actor.id && drawnBy.every(({ id }) => id !== reviewer.id)) return reviewer;
+  throw new AppError(
+    'own-work',
+    422,
+    'Another person has to check it',
+    `${reviewer.name} drew or sends this net. Choose a reviewer who did not.`,
+  );
+}
+
+const changedMeanwhile = (changeNumber: number) =>
+  conflict(
+    'conflict',
+    'The net was changed meanwhile',
+    'Somebody changed the net after you last saw it, so it was not sent. Look at the change and send it again.',
+    { changeNumber },
+  );
+
+/** Halves of a pair of characters, which canonical JSON cannot hold, become the sign for an unreadable one. */
+const wellFormed = (text: string) => text.replaceAll(/\p{Cs}/gu, '\ufffd');
