@@ -40,8 +40,9 @@ function followTraffic(server: Server): { sockets: Set<Socket>; responses: Set<S
   return { sockets, responses };
 }
 
+/** By what the browser asked for: headers given to writeHead cannot be read back. */
 const isEventStream = (response: ServerResponse) =>
-  String(response.getHeader('content-type') ?? '').startsWith('text/event-stream');
+  (response.req.headers.accept ?? '').includes('text/event-stream');
 
 /** Calls `stop` once, at the first signal, or when the process that started this one has gone. */
 export function onStopAsked(stop: () => Promise<void>): void {

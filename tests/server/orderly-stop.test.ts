@@ -48,7 +48,7 @@ describe('the orderly stop of the server', () => {
       res.writeHead(200, { 'Content-Type': 'text/event-stream' });
       res.write('data: hello\n\n');
     });
-    const stream = await fetch(address);
+    const stream = await fetch(address, { headers: { Accept: 'text/event-stream' } });
     expect(await tookMs(stop(5_000))).toBeLessThan(1_000);
     expect(await stream.text()).toBe('data: hello\n\n');
   });
