@@ -1,6 +1,11 @@
 import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
-import { questionLevels, questionPermeability, questionPlace } from '#shared/compute/net/input-questions.ts';
+import {
+  extentOf,
+  questionLevels,
+  questionPermeability,
+  questionPlace,
+} from '#shared/compute/net/input-questions.ts';
 import { headsOf, type NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind, netLinesOf } from '#shared/compute/net/net-lines.ts';
 import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
@@ -86,6 +91,7 @@ function readOnSection(
     ...quantityFindings,
   ];
   const finished = !withholdsFigures(findings) && heads.count !== null;
+  const extent = extentOf(model.lines, map);
   const ground = groundOf(model, heads, setOut, map, inputs);
   return {
     state: finished ? 'read' : 'unfinished',
@@ -94,7 +100,7 @@ function readOnSection(
     lines: linesRead(model, heads),
     points: points.map((point) => {
       const reading = finished ? readPoint(point, ground) : withheldBy(point, findings);
-      const far = questionPlace(point, model.lines, map, document.unitSystem);
+      const far = questionPlace(point, extent, document.unitSystem);
       return { ...reading, findings: [...reading.findings, ...far] };
     }),
     quantities,

@@ -1,4 +1,4 @@
-import { boxesMeet, type Polyline, vertexOf } from '#shared/compute/geometry/polyline.ts';
+import { type Box, boxesMeet, type Polyline, RUN } from '#shared/compute/geometry/polyline.ts';
 import { type Pair, segmentsMeet } from '#shared/compute/geometry/predicates.ts';
 
 /** Where two polylines meet: the distance along each, and the place. */
@@ -12,23 +12,31 @@ export type Crossing = { readonly s: number; readonly t: number; readonly at: Pa
 export function crossingsOf(first: Polyline, second: Polyline): Crossing[] {
   if (!boxesMeet(first.box, second.box)) return [];
   const found: Crossing[] = [];
-  for (let i = 0; i + 1 < first.cum.length; i += 1) {
-    const [ax, ay] = vertexOf(first, i);
-    const [bx, by] = vertexOf(first, i + 1);
-    const box = {
-      minX: Math.min(ax, bx),
-      maxX: Math.max(ax, bx),
-      minY: Math.min(ay, by),
-      maxY: Math.max(ay, by),
-    };
-    if (!boxesMeet(box, second.box)) continue;
-    for (let j = 0; j + 1 < second.cum.length; j += 1) {
+  for (let p = 0; 4 * p < first.runs.length; p += 1) {
+    if (!runMeetsBox(first, p, second.box)) continue;
+    for (let q = 0; 4 * q < second.runs.length; q += 1) {
+      if (runsMeet(first.runs, p, second.runs, q)) crossRuns(first, p, second, q, found);
+    }
+  }
+  found.sort((a, b) => a.s - b.s);
+  return found.filter((crossing, i) => i === 0 || !sameCrossing(crossing, found[i - 1]!));
+}
+
+function crossRuns(first: Polyline, p: number, second: Polyline, q: number, found: Crossing[]): void {
+  const lastI = Math.min(first.cum.length - 1, (p + 1) * RUN);
+  const lastJ = Math.min(second.cum.length - 1, (q + 1) * RUN);
+  for (let i = p * RUN; i < lastI; i += 1) {
+    const ax = first.xy[2 * i]!;
+    const ay = first.xy[2 * i + 1]!;
+    const bx = first.xy[2 * i + 2]!;
+    const by = first.xy[2 * i + 3]!;
+    for (let j = q * RUN; j < lastJ; j += 1) {
       const cx = second.xy[2 * j]!;
       const cy = second.xy[2 * j + 1]!;
       const dx = second.xy[2 * j + 2]!;
       const dy = second.xy[2 * j + 3]!;
-      if (Math.max(cx, dx) < box.minX || Math.min(cx, dx) > box.maxX) continue;
-      if (Math.max(cy, dy) < box.minY || Math.min(cy, dy) > box.maxY) continue;
+      if (Math.max(cx, dx) < Math.min(ax, bx) || Math.min(cx, dx) > Math.max(ax, bx)) continue;
+      if (Math.max(cy, dy) < Math.min(ay, by) || Math.min(cy, dy) > Math.max(ay, by)) continue;
       if (!segmentsMeet(ax, ay, bx, by, cx, cy, dx, dy)) continue;
       const [t, u] = parametersOf(ax, ay, bx, by, cx, cy, dx, dy);
       found.push({
@@ -38,8 +46,24 @@ export function crossingsOf(first: Polyline, second: Polyline): Crossing[] {
       });
     }
   }
-  found.sort((a, b) => a.s - b.s);
-  return found.filter((crossing, i) => i === 0 || !sameCrossing(crossing, found[i - 1]!));
+}
+
+function runMeetsBox({ runs }: Polyline, run: number, box: Box): boolean {
+  return (
+    runs[4 * run]! <= box.maxX &&
+    runs[4 * run + 2]! >= box.minX &&
+    runs[4 * run + 1]! <= box.maxY &&
+    runs[4 * run + 3]! >= box.minY
+  );
+}
+
+function runsMeet(a: Float64Array, p: number, b: Float64Array, q: number): boolean {
+  return (
+    a[4 * p]! <= b[4 * q + 2]! &&
+    a[4 * p + 2]! >= b[4 * q]! &&
+    a[4 * p + 1]! <= b[4 * q + 3]! &&
+    a[4 * p + 3]! >= b[4 * q + 1]!
+  );
 }
 
 function sameCrossing(a: Crossing, b: Crossing): boolean {

@@ -9,9 +9,18 @@ export type Box = {
 
 /**
  * An open polyline. `xy`: vertices, flat, length 2·n, x0 y0 x1 y1 …, any one frame, no two consecutive equal;
- * `cum`: distance along the line at each vertex, length n, starting at 0.
+ * `cum`: distance along the line at each vertex, length n, starting at 0; `runs`: boxes of every run of `RUN` segments,
+ * flat, minX minY maxX maxY …, so that a search can pass over what is far away.
  */
-export type Polyline = { readonly xy: Float64Array; readonly cum: Float64Array; readonly box: Box };
+export type Polyline = {
+  readonly xy: Float64Array;
+  readonly cum: Float64Array;
+  readonly box: Box;
+  readonly runs: Float64Array;
+};
+
+/** Segments to a run. */
+export const RUN = 12;
 
 /** A place on a polyline: its distance along it, its coordinates, and how far the asking point was from it. */
 export type PolylinePlace = {
@@ -53,7 +62,27 @@ export function polylineFromFlat(xy: Float64Array): Polyline {
     maxY = Math.max(maxY, y);
     if (i > 0) cum[i] = cum[i - 1]! + Math.hypot(x - xy[2 * i - 2]!, y - xy[2 * i - 1]!);
   }
-  return { xy, cum, box: { minX, minY, maxX, maxY } };
+  return { xy, cum, box: { minX, minY, maxX, maxY }, runs: runBoxes(xy) };
+}
+
+function runBoxes(xy: Float64Array): Float64Array {
+  const segments = xy.length / 2 - 1;
+  const runs = new Float64Array(4 * Math.ceil(segments / RUN));
+  for (let r = 0; 4 * r < runs.length; r += 1) {
+    const last = Math.min(segments, (r + 1) * RUN);
+    let minX = Number.POSITIVE_INFINITY;
+    let minY = Number.POSITIVE_INFINITY;
+    let maxX = Number.NEGATIVE_INFINITY;
+    let maxY = Number.NEGATIVE_INFINITY;
+    for (let i = r * RUN; i <= last; i += 1) {
+      minX = Math.min(minX, xy[2 * i]!);
+      maxX = Math.max(maxX, xy[2 * i]!);
+      minY = Math.min(minY, xy[2 * i + 1]!);
+      maxY = Math.max(maxY, xy[2 * i + 1]!);
+    }
+    runs.set([minX, minY, maxX, maxY], 4 * r);
+  }
+  return runs;
 }
 
 /** Length of a polyline in its frame's unit. */
@@ -104,6 +133,10 @@ export function nearestOnPolyline(line: Polyline, x: number, y: number): Polylin
   let bestSegment = 0;
   let bestT = 0;
   for (let i = 0; i + 1 < cum.length; i += 1) {
+    if (i % RUN === 0 && squareToRun(line, i / RUN, x, y) >= best) {
+      i += RUN - 1;
+      continue;
+    }
     const ax = xy[2 * i]!;
     const ay = xy[2 * i + 1]!;
     const dx = xy[2 * i + 2]! - ax;
@@ -128,6 +161,13 @@ export function nearestOnPolyline(line: Polyline, x: number, y: number): Polylin
     distance: Math.sqrt(best),
     segment: bestSegment,
   };
+}
+
+/** Squared distance from a point to the box of a run; 0 inside it. */
+function squareToRun({ runs }: Polyline, run: number, x: number, y: number): number {
+  const dx = Math.max(runs[4 * run]! - x, 0, x - runs[4 * run + 2]!);
+  const dy = Math.max(runs[4 * run + 1]! - y, 0, y - runs[4 * run + 3]!);
+  return dx * dx + dy * dy;
 }
 
 /**

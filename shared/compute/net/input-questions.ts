@@ -72,36 +72,37 @@ export function questionPermeability(permeability: EntityOf<'permeability'>): Fi
   ];
 }
 
+/** Least and greatest offset and elevation of everything traced, document length unit. */
+export type SectionExtent = {
+  readonly offsets: readonly [number, number];
+  readonly elevations: readonly [number, number];
+};
+
+/** Extent of the traced lines in the section; null when nothing is traced. Corners of boxes stand for the lines. */
+export function extentOf(lines: readonly NetLine[], map: SectionMap): SectionExtent | null {
+  const corners = lines.flatMap(({ shape: { box } }) => [
+    map.toSection(sheetPx(box.minX, box.minY)),
+    map.toSection(sheetPx(box.maxX, box.minY)),
+    map.toSection(sheetPx(box.minX, box.maxY)),
+    map.toSection(sheetPx(box.maxX, box.maxY)),
+  ]);
+  if (corners.length === 0) return null;
+  const range = (values: number[]): [number, number] => [Math.min(...values), Math.max(...values)];
+  return { offsets: range(corners.map((at) => at[0])), elevations: range(corners.map((at) => at[1])) };
+}
+
 /**
  * Questions a point that lies more than 100 m (330 ft) off everything that is traced, as the place of a point typed
  * with a slip does.
  */
 export function questionPlace(
   point: PlacedPoint,
-  lines: readonly NetLine[],
-  map: SectionMap,
+  extent: SectionExtent | null,
   system: UnitSystem,
 ): Finding[] {
   const { offset, elevation } = point;
-  if (offset === null || elevation === null || lines.length === 0) return [];
-  const corners = lines.flatMap(({ shape: { box } }) =>
-    [
-      [box.minX, box.minY],
-      [box.maxX, box.minY],
-      [box.minX, box.maxY],
-      [box.maxX, box.maxY],
-    ].map(([x = 0, y = 0]) => map.toSection(sheetPx(x, y))),
-  );
-  const off = Math.hypot(
-    beyond(
-      offset,
-      corners.map((corner) => corner[0]),
-    ),
-    beyond(
-      elevation,
-      corners.map((corner) => corner[1]),
-    ),
-  );
+  if (offset === null || elevation === null || extent === null) return [];
+  const off = Math.hypot(beyond(offset, extent.offsets), beyond(elevation, extent.elevations));
   const [limit, unit] = system === 'SI' ? [FAR_METRES, 'm'] : [FAR_FEET, 'ft'];
   if (off <= limit) return [];
   return [
@@ -109,14 +110,11 @@ export function questionPlace(
       'question',
       'pointFarOff',
       `The point lies more than ${limit} ${unit} off the traced section. Check its coordinates.`,
-      {
-        entityIds: [point.id],
-        at: point.sheetAt,
-      },
+      { entityIds: [point.id], at: point.sheetAt },
     ),
   ];
 }
 
-function beyond(value: number, range: readonly number[]): number {
-  return Math.max(0, Math.min(...range) - value, value - Math.max(...range));
+function beyond(value: number, [least, greatest]: readonly [number, number]): number {
+  return Math.max(0, least - value, value - greatest);
 }
