@@ -22,7 +22,7 @@ interface FieldFrame {
 export const inputClass = (wrong: boolean) =>
   classNames(
     'w-full min-w-0 rounded-sheet border bg-white px-2 py-[5px] text-base disabled:bg-hover disabled:text-ink-2',
-    'read-only:bg-hover',
+    '[&[readonly]]:bg-hover',
     wrong ? 'border-wrong' : 'border-edge',
   );
 

@@ -10,8 +10,8 @@ export function ProblemNote({ error, children }: { error: unknown; children?: Re
     <div role="alert" className="border-l-[3px] border-wrong bg-film py-1 pl-3">
       <p className="m-0 text-wrong">{detail}</p>
       <FieldErrors error={error} />
-      {children}
       <RequestNumber error={error} />
+      {children}
     </div>
   );
 }

@@ -1,19 +1,29 @@
 import type { ReactNode, TdHTMLAttributes, ThHTMLAttributes } from 'react';
 import { classNames } from './class-names.ts';
 
-/** A ruled table that scrolls sideways inside its own frame on a narrow screen. */
-export function Table({ caption, children }: { caption: string; children: ReactNode }) {
+interface TableProps {
+  caption: string;
+  /** On a narrow screen each row becomes a block of its own, for tables with buttons in their rows. */
+  stacked?: boolean;
+  children: ReactNode;
+}
+
+/** A ruled table that scrolls sideways inside its own frame on a narrow screen, or is stacked there. */
+export function Table({ caption, stacked = false, children }: TableProps) {
   return (
     // A region that scrolls must be reachable by keyboard.
     // biome-ignore lint/a11y/noNoninteractiveTabindex: the scrolling frame has no other way in for the keyboard
     <section aria-label={caption} tabIndex={0} className="overflow-x-auto">
-      <table className="w-full">
+      <table className={classNames('w-full', stacked && STACKED)}>
         <caption className="sr-only">{caption}</caption>
         {children}
       </table>
     </section>
   );
 }
+
+const STACKED =
+  'max-sm:block max-sm:[&_thead]:sr-only max-sm:[&_tbody]:block max-sm:[&_tr]:block max-sm:[&_tr]:border-b max-sm:[&_tr]:border-rule max-sm:[&_tr]:py-1.5 max-sm:[&_td]:block max-sm:[&_td]:border-b-0 max-sm:[&_td]:py-0.5 max-sm:[&_td]:text-left';
 
 type Numeric = { numeric?: boolean };
 

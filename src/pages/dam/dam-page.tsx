@@ -13,11 +13,13 @@ import { paths } from '#client/lib/paths.ts';
 import { damsText as text } from '#client/text/dams.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 import { AppFrame } from '../app-frame.tsx';
+import { useDamLive } from '../use-dam-live.ts';
 import { DrawingsPanel } from './drawings-panel.tsx';
 
 export function DamPage() {
   const { damId = '' } = useParams();
   const { data: dam } = useSuspenseQuery(damQuery(damId));
+  useDamLive(damId);
   const [search] = useSearchParams();
   return (
     <AppFrame trail={[{ label: text.title, to: paths.dams }, { label: dam.name }]}>
@@ -34,7 +36,7 @@ export function DamPage() {
         {dam.archivedAt === null ? null : (
           <p className="mt-0 mb-4 border-l-[3px] border-attention bg-film px-3 py-2">{text.isPutAway}</p>
         )}
-        <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
+        <div className="grid grid-cols-[minmax(0,1fr)] gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
           <DrawingsPanel dam={dam} archived={search.get('show') === 'put-away'} />
           <SidePanels dam={dam} />
         </div>

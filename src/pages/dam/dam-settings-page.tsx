@@ -37,7 +37,7 @@ export function DamSettingsPage() {
         heading={text.settings}
         lead={canManage ? dam.name : settings.cannotManage}
       >
-        <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_400px]">
+        <div className="grid grid-cols-[minmax(0,1fr)] gap-7 lg:grid-cols-[minmax(0,1fr)_400px]">
           <div className="flex min-w-0 flex-col gap-4">
             <Panel title={text.people} look="register">
               <Part>

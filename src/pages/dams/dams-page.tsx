@@ -18,7 +18,7 @@ export function DamsPage() {
   return (
     <AppFrame trail={[{ label: text.title }]}>
       <Page title={text.title} heading={text.yours}>
-        <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
+        <div className="grid grid-cols-[minmax(0,1fr)] gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
           <Panel
             look="register"
             className="self-start"

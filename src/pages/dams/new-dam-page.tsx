@@ -19,6 +19,7 @@ export function NewDamPage() {
         <Panel title={settings.facts} look="register">
           <div className="p-3.5">
             <DamForm
+              isMain
               error={create.error}
               busy={create.isPending}
               submitLabel={settings.create}

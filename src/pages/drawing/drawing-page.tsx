@@ -12,6 +12,7 @@ import { paths } from '#client/lib/paths.ts';
 import { damsText } from '#client/text/dams.ts';
 import { drawingFacts, drawingName, drawingsText as text } from '#client/text/drawings.ts';
 import { AppFrame } from '../app-frame.tsx';
+import { useDamLive } from '../use-dam-live.ts';
 import { PutDrawingAway } from './put-drawing-away.tsx';
 import { SheetAndSections } from './sheet-and-sections.tsx';
 
@@ -19,6 +20,7 @@ export function DrawingPage() {
   const { drawingId = '' } = useParams();
   const { data: drawing } = useSuspenseQuery(drawingQuery(drawingId));
   const { data: dam } = useSuspenseQuery(damQuery(drawing.damId));
+  useDamLive(drawing.damId);
   const [search] = useSearchParams();
   const page = Number(search.get('sheet') ?? '1');
   const sheet = drawing.sheets.find((each) => each.pageNumber === page) ?? drawing.sheets[0];
@@ -51,7 +53,7 @@ export function DrawingPage() {
           </div>
         )}
         {sheet ? <SheetAndSections key={sheet.id} drawing={drawing} sheet={sheet} can={can} /> : null}
-        <div className="mt-4 grid gap-4 lg:grid-cols-2">
+        <div className="mt-4 grid grid-cols-[minmax(0,1fr)] gap-4 lg:grid-cols-2">
           <Panel title={text.fields}>
             <TitleForm key={drawing.id} drawing={drawing} canEdit={can.includes('drawing.edit')} />
           </Panel>

@@ -36,7 +36,7 @@ export function SheetAndSections({ drawing, sheet, can }: SheetAndSectionsProps)
     (section) => section.archivedAt === null && section.id !== framing?.section?.id,
   );
   return (
-    <div className="grid gap-4 lg:grid-cols-[minmax(0,1fr)_360px]">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-4 lg:grid-cols-[minmax(0,1fr)_360px]">
       <Panel
         look="register"
         className="min-w-0 self-start"

@@ -6,8 +6,8 @@ import { problemText as text } from '#client/text/problems.ts';
 export function NotFoundPage() {
   return (
     <PublicLayout title={text.notFoundTitle}>
-      <p className="mt-0">{text.notFound}</p>
-      <p>{text.askForPart}</p>
+      <p className="mb-2">{text.notFound}</p>
+      <p className="mb-4">{text.askForPart}</p>
       <ButtonLink look="main" to={paths.dams}>
         {text.toDams}
       </ButtonLink>

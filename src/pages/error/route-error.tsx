@@ -50,7 +50,7 @@ interface FailedProps {
 function Failed({ title, detail, error, retry }: FailedProps) {
   return (
     <PublicLayout title={title}>
-      <p className="mt-0">{detail}</p>
+      <p className="mb-3">{detail}</p>
       <RequestNumber error={error} />
       <div className="mt-4 flex flex-wrap gap-2">
         {retry ? (

@@ -24,8 +24,8 @@ export function InvitationPage() {
 export function InvitationInvalid() {
   return (
     <PublicLayout title={text.linkInvalid}>
-      <p className="mt-0">{text.invitationInvalid}</p>
-      <p className="mb-0">
+      <p className="mb-3">{text.invitationInvalid}</p>
+      <p>
         <Link to={paths.signIn}>{text.toSignIn}</Link>
       </p>
     </PublicLayout>

@@ -23,7 +23,7 @@ export function ResetPasswordPage() {
   if (isSet)
     return (
       <PublicLayout title={text.setTitle}>
-        <p role="status" className="mt-0">
+        <p role="status" className="mb-3">
           {text.passwordSet}
         </p>
         <Link to={paths.signIn}>{text.toSignIn}</Link>
@@ -32,7 +32,7 @@ export function ResetPasswordPage() {
   if (token === '')
     return (
       <PublicLayout title={text.linkInvalid}>
-        <p className="mt-0">{text.resetInvalid}</p>
+        <p className="mb-3">{text.resetInvalid}</p>
         <Link to={paths.forgotPassword}>{text.askAgain}</Link>
       </PublicLayout>
     );

@@ -12,7 +12,7 @@ export function PeoplePage() {
   return (
     <AppFrame trail={[{ label: text.title }]}>
       <Page title={text.title} heading={text.title} lead={text.lead}>
-        <div className="grid gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
+        <div className="grid grid-cols-[minmax(0,1fr)] gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
           <Panel title={text.title} look="register" className="min-w-0 self-start">
             <Part>
               <PeopleTable ownPersonId={person?.id ?? ''} />

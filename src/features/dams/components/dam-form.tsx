@@ -47,11 +47,13 @@ interface DamFormProps {
   error: unknown;
   busy: boolean;
   submitLabel: string;
+  /** The main button only where the form is the page's main work. */
+  isMain?: boolean;
   onSubmit: (input: DamInput) => void;
 }
 
 /** What a dam is: name, units, datum, full supply level, unit weight of water. */
-export function DamForm({ dam, error, busy, submitLabel, onSubmit }: DamFormProps) {
+export function DamForm({ dam, error, busy, submitLabel, isMain = false, onSubmit }: DamFormProps) {
   const [typed, setTyped] = useState(() => typedFrom(dam));
   const [wrong, setWrong] = useState<{ field: keyof Typed; message: string } | null>(null);
   const set = (change: Partial<Typed>) => setTyped({ ...typed, ...change });
@@ -113,7 +115,7 @@ export function DamForm({ dam, error, busy, submitLabel, onSubmit }: DamFormProp
         onChange={(event) => set({ gammaW: event.target.value })}
       />
       <div>
-        <Button type="submit" look="main" busy={busy} busyLabel={commonText.saving}>
+        <Button type="submit" look={isMain ? 'main' : 'plain'} busy={busy} busyLabel={commonText.saving}>
           {submitLabel}
         </Button>
       </div>

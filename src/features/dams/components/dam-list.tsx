@@ -17,10 +17,12 @@ export function DamList({ archived, canCreate }: { archived: boolean; canCreate:
       <thead>
         <tr>
           <HeadCell>{text.dam}</HeadCell>
-          <HeadCell numeric>{text.fullSupply}</HeadCell>
+          <HeadCell numeric className="max-sm:hidden">
+            {text.fullSupply}
+          </HeadCell>
           <HeadCell numeric>{text.drawings}</HeadCell>
           <HeadCell>{text.openNotes}</HeadCell>
-          <HeadCell>{text.yourPart}</HeadCell>
+          <HeadCell className="max-sm:hidden">{text.yourPart}</HeadCell>
         </tr>
       </thead>
       <tbody>
@@ -45,14 +47,14 @@ function DamRow({ dam }: { dam: DamDto }) {
           {dam.name}
         </Link>
       </Cell>
-      <Cell numeric className="whitespace-nowrap">
+      <Cell numeric className="whitespace-nowrap max-sm:hidden">
         {levelText(dam.fullSupplyLevel, dam)}
       </Cell>
       <Cell numeric>{dam.drawingCount}</Cell>
       <Cell className={dam.openNoteCount > 0 ? 'font-semibold text-attention' : 'text-ink-2'}>
         {dam.openNoteCount > 0 ? text.openNoteCount(dam.openNoteCount) : '–'}
       </Cell>
-      <Cell className="text-ink-2">{text.roles(dam.roles) || '–'}</Cell>
+      <Cell className="text-ink-2 max-sm:hidden">{text.roles(dam.roles) || '–'}</Cell>
     </tr>
   );
 }

@@ -23,7 +23,7 @@ export function MemberTable({ damId, ownPersonId, canManage }: MemberTableProps)
   const { data: members } = useSuspenseQuery(memberListQuery(damId));
   if (members.length === 0) return <Empty>{text.noPeople}</Empty>;
   return (
-    <Table caption={text.people}>
+    <Table caption={text.people} stacked>
       <thead>
         <tr>
           <HeadCell>{settings.person}</HeadCell>

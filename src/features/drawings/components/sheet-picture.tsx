@@ -29,7 +29,8 @@ export function tilesOf(sheet: SheetDto): Tile[] {
   return tiles;
 }
 
-const percent = (part: number, whole: number) => `${(100 * part) / whole}%`;
+/** Part of a length in percent, for CSS. */
+export const percent = (part: number, whole: number) => `${(100 * part) / whole}%`;
 
 function tileAt(sheet: SheetDto, level: number, span: number, x: number, y: number): Tile {
   const { widthPx, heightPx, tiles } = sheet;
@@ -50,6 +51,8 @@ interface SheetPictureProps {
   label: string;
   /** Drawn over the sheet in its own pixels. */
   children?: ReactNode;
+  /** Placed over the sheet in percent of its size. */
+  labels?: ReactNode;
   framing?: boolean;
   onPointerDown?: PointerEventHandler<SVGSVGElement>;
   onPointerMove?: PointerEventHandler<SVGSVGElement>;
@@ -57,7 +60,14 @@ interface SheetPictureProps {
 }
 
 /** The whole sheet, made of the tiles of one level, with an overlay in sheet pixels. */
-export function SheetPicture({ sheet, label, children, framing = false, ...pointer }: SheetPictureProps) {
+export function SheetPicture({
+  sheet,
+  label,
+  children,
+  labels,
+  framing = false,
+  ...pointer
+}: SheetPictureProps) {
   const { widthPx, heightPx } = sheet;
   return (
     <div
@@ -85,6 +95,7 @@ export function SheetPicture({ sheet, label, children, framing = false, ...point
       >
         {children}
       </svg>
+      {labels}
     </div>
   );
 }

@@ -2,7 +2,7 @@ import { type PointerEvent, useState } from 'react';
 import { sectionTitle, drawingsText as text } from '#client/text/drawings.ts';
 import type { SectionDto, SheetDto } from '#shared/contract/drawings.ts';
 import { type Frame, frameBetween, sheetPointAt } from './frame.ts';
-import { SheetPicture } from './sheet-picture.tsx';
+import { percent, SheetPicture } from './sheet-picture.tsx';
 
 interface SheetWithFramesProps {
   sheet: SheetDto;
@@ -32,40 +32,36 @@ export function SheetWithFrames({ sheet, drawingName, sections, framing }: Sheet
       sheet={sheet}
       label={text.pictureOf(drawingName, sheet.pageNumber)}
       framing={framing !== undefined}
+      labels={sections.map((section) => <SectionLabel key={section.id} section={section} sheet={sheet} />)}
       onPointerDown={down}
       onPointerMove={move}
       onPointerUp={() => setStart(null)}
     >
       {sections.map((section) => (
-        <SectionFrame key={section.id} section={section} sheet={sheet} />
+        <FrameOutline key={section.id} frame={section.frame} className="fill-none stroke-phreatic" />
       ))}
-      {framing?.frame ? (
-        <FrameOutline frame={framing.frame} className="fill-equipotential/10 stroke-equipotential" />
-      ) : null}
+      <FrameOutline frame={framing?.frame ?? null} className="fill-equipotential/10 stroke-equipotential" />
     </SheetPicture>
   );
 }
 
-function SectionFrame({ section, sheet }: { section: SectionDto; sheet: SheetDto }) {
+function SectionLabel({ section, sheet }: { section: SectionDto; sheet: SheetDto }) {
   if (!section.frame) return null;
-  const size = sheet.widthPx / 55;
+  const [x, y] = section.frame;
+  const place = { left: percent(x, sheet.widthPx), top: percent(y, sheet.heightPx) };
   return (
-    <g>
-      <FrameOutline frame={section.frame} className="fill-none stroke-phreatic" />
-      <text
-        x={section.frame[0] + size * 0.4}
-        y={section.frame[1] + size * 1.2}
-        fontSize={size}
-        className="fill-phreatic stroke-film font-semibold [paint-order:stroke]"
-        strokeWidth={size * 0.3}
-      >
-        {sectionTitle(section.name)}
-      </text>
-    </g>
+    <span
+      style={place}
+      className="pointer-events-none absolute bg-film px-1 text-xs font-semibold whitespace-nowrap text-phreatic"
+    >
+      {sectionTitle(section.name)}
+    </span>
   );
 }
 
-function FrameOutline({ frame: [x, y, width, height], className }: { frame: Frame; className: string }) {
+function FrameOutline({ frame, className }: { frame: Frame | null; className: string }) {
+  if (!frame) return null;
+  const [x, y, width, height] = frame;
   return (
     <rect
       x={x}

@@ -1,6 +1,8 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
+import { ApiProblem } from '#client/lib/api-problem.ts';
 import { byteText, drawingsText as text } from '#client/text/drawings.ts';
 import { MAX_UPLOAD_BYTES } from '#shared/contract/limits.ts';
+import type { ProblemCode } from '#shared/contract/problem.ts';
 import type { SendFile, SendOutcome } from './send-file.ts';
 
 export type UploadState =
@@ -31,6 +33,8 @@ export interface UploadQueue {
 
 /** Two at a time: the second file starts while the first is being checked, and none starves a slow line. */
 const AT_ONCE = 2;
+/** How long the line of a file that has arrived stays. */
+const ADDED_SHOWN_MS = 5000;
 
 /** What is wrong with a file before any of it is sent; null when nothing is. */
 export function faultBeforeSending(file: Pick<File, 'size'>): string | null {
@@ -50,9 +54,17 @@ export function createUploadQueue(send: SendFile): UploadQueue {
       uploads: uploads.map((each) => (each.id === id ? { ...each, ...part } : each)),
     }));
 
+  const remove = (id: number) => {
+    running.get(id)?.abort();
+    store.setState(({ uploads }) => ({ uploads: uploads.filter((each) => each.id !== id) }));
+  };
+
   const finish = (upload: Upload, result: SendOutcome) => {
     change(upload.id, { progress: progressOf(result) });
-    if (result.outcome === 'added') for (const listener of listeners) listener(upload.damId);
+    if (result.outcome !== 'added') return;
+    for (const listener of listeners) listener(upload.damId);
+    // By then the register shows the drawing itself.
+    setTimeout(() => remove(upload.id), ADDED_SHOWN_MS);
   };
 
   const start = async (upload: Upload) => {
@@ -86,10 +98,7 @@ export function createUploadQueue(send: SendFile): UploadQueue {
       store.setState((present) => ({ uploads: [...present.uploads, ...uploads] }));
       startWaiting();
     },
-    remove(id) {
-      running.get(id)?.abort();
-      store.setState(({ uploads }) => ({ uploads: uploads.filter((each) => each.id !== id) }));
-    },
+    remove,
     retry: (id) => restart(id, {}),
     keepSecond: (id) => restart(id, { again: true }),
     onAdded(listener) {
@@ -111,8 +120,25 @@ function progressOf(result: SendOutcome): UploadState {
   if (result.outcome === 'added') return { state: 'added' };
   if (result.outcome === 'same')
     return { state: 'same', drawingId: result.drawingId, message: result.message };
-  return { state: 'failed', message: result.error.message, error: result.error, canRetry: true };
+  return {
+    state: 'failed',
+    message: result.error.message,
+    error: result.error,
+    canRetry: isWorthTrying(result.error),
+  };
 }
+
+/** What the server says of the file itself does not change by sending it once more. */
+const LASTING: readonly ProblemCode[] = [
+  'unsupported-file',
+  'refused-file',
+  'too-large',
+  'invalid-input',
+  'forbidden',
+  'not-found',
+];
+
+const isWorthTrying = (error: Error) => !(error instanceof ApiProblem && LASTING.includes(error.code));
 
 export const isOnItsWay = (upload: Upload): boolean =>
   upload.progress.state === 'waiting' || upload.progress.state === 'sending';

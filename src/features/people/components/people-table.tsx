@@ -11,7 +11,7 @@ import { peopleQuery, useChangePerson } from '../api/people-queries.ts';
 export function PeopleTable({ ownPersonId }: { ownPersonId: string }) {
   const { data: people } = useSuspenseQuery(peopleQuery());
   return (
-    <Table caption={text.caption}>
+    <Table caption={text.caption} stacked>
       <thead>
         <tr>
           <HeadCell>{text.person}</HeadCell>
@@ -63,7 +63,7 @@ function PersonActions({
     change.mutate(part, { onSuccess: () => notice(text.done(name)) });
   const isActive = person.state !== 'deactivated';
   return (
-    <div className="flex flex-wrap justify-end gap-2">
+    <div className="flex flex-wrap sm:justify-end gap-2">
       <Button
         look="quiet"
         aria-label={person.admin ? text.makeMemberOf(name) : text.makeAdminOf(name)}
