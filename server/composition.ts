@@ -1,3 +1,4 @@
+import path from 'node:path';
 import type { Logger } from 'pino';
 import type { AppDeps } from './app-deps.ts';
 import type { AppConfig } from './config/config.ts';
@@ -5,9 +6,14 @@ import { createDataSource } from './entities/data-source.ts';
 import { systemClock } from './http/clock.ts';
 import { createRenderProcess } from './imaging/render-process.ts';
 import { createRenderDrawingHandler } from './jobs/handlers/render-drawing.ts';
+import { createSendMailHandler } from './jobs/handlers/send-mail.ts';
 import type { JobHandlers } from './jobs/jobs-port.ts';
 import { createPgBossJobs } from './jobs/pg-boss-jobs.ts';
-import type { LivePort } from './live/live-port.ts';
+import { createPgLive } from './live/pg-live.ts';
+import type { MailerPort } from './mail/mailer-port.ts';
+import { createOutboxFolderMailer } from './mail/outbox-folder-mailer.ts';
+import { createSmtpMailer } from './mail/smtp-mailer.ts';
+import { requeueWaitingMails } from './services/mail-delivery.ts';
 import { requeueRenderJobs } from './services/render-job-service.ts';
 import { readingDeps } from './services/service-deps.ts';
 import { createLocalDiskStorage } from './storage/local-disk-storage.ts';
@@ -28,7 +34,8 @@ export async function compose(config: AppConfig, logger: Logger): Promise<Produc
   const login = loginOf(config);
   const db = await createDataSource(login).initialize();
   const jobs = createPgBossJobs({ ...login, logger });
-  const live = liveInProcess();
+  const live = createPgLive({ ...login, logger });
+  const mailer = createMailer(config);
   const storage = createLocalDiskStorage(config.storageDir);
   const deps: AppDeps = { config, db, storage, jobs, live, clock: systemClock, logger };
   return {
@@ -36,13 +43,15 @@ export async function compose(config: AppConfig, logger: Logger): Promise<Produc
     async startWork() {
       await sweepLeftovers(config.storageDir, systemClock.now());
       await live.start();
-      await jobs.start(jobHandlers(deps));
+      await jobs.start(jobHandlers(deps, mailer));
       // What waited or was under way when the last process ended is taken up again.
       await requeueRenderJobs(readingDeps(deps));
+      await requeueWaitingMails(deps);
     },
     async stop(graceMs) {
       await jobs.stop(graceMs);
       await live.stop();
+      mailer.close();
       await db.destroy();
     },
   };
@@ -54,15 +63,16 @@ function loginOf(config: AppConfig): { url: string; role?: string } {
   return { url: config.databaseUrl ?? '', role: APP_ROLE };
 }
 
-function jobHandlers(deps: AppDeps): JobHandlers {
-  return {
-    'render-drawing': createRenderDrawingHandler(deps, () => createRenderProcess()),
-    'send-mail': async () => {
-      throw new Error('Mail is not wired yet.');
-    },
-  };
+function createMailer({ smtpUrl, mailFrom: from, storageDir }: AppConfig): MailerPort {
+  if (smtpUrl) return createSmtpMailer({ smtpUrl, from });
+  return createOutboxFolderMailer({ folder: path.join(storageDir, 'outbox'), from });
 }
 
-function liveInProcess(): LivePort {
-  return { async publish() {}, subscribe: () => () => {}, async start() {}, async stop() {} };
+function jobHandlers(deps: AppDeps, mailer: MailerPort): JobHandlers {
+  const { smtpUrl, production } = deps.config;
+  return {
+    'render-drawing': createRenderDrawingHandler(deps, () => createRenderProcess()),
+    // Where mails are read on a page of ours their links have to stay.
+    'send-mail': createSendMailHandler({ ...deps, mailer, forgetLinks: smtpUrl !== null || production }),
+  };
 }
