@@ -95,7 +95,7 @@ export function fullSupplyNet(): DemoNet {
       ...bbPoints.map(([name, place], index) => readingPoint(name, index + 1, place)),
     ],
     singles: {
-      setOut: { statedScale: 500, upstream: 'left' },
+      setOut: { statedScale: 400, upstream: 'left' },
       waterLevels: { headwater: FULL_SUPPLY, tailwater: null, source: 'Full supply level as on the drawing' },
       permeability: { k: 2e-7, unit: 'm/s', factor: 3, source: 'Two falling-head tests of 1961' },
       netCount: { drops: 10 },

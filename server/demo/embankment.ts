@@ -16,11 +16,11 @@ const DOWNSTREAM_TOE = 45;
 export const seepage: BasicParabola = { S: 6, H: FULL_SUPPLY - BASE };
 
 export const sectionBB: SheetFrame = {
-  widthPx: 4000,
-  heightPx: 2200,
-  pxPerMetre: pxPerMetreAt(500, 300),
+  widthPx: 4400,
+  heightPx: 1820,
+  pxPerMetre: pxPerMetreAt(400, 300),
   skewDeg: 1.1,
-  origin: [2236, 1430],
+  origin: [2495, 1235],
   datumElevation: BASE,
 };
 
@@ -95,14 +95,14 @@ function drawWater(pen: Pen): void {
 }
 
 function drawLettering(pen: Pen, title: string): void {
-  pen.text(title, [-78, 140], 2.6, { width: 4 });
-  pen.text('SCALE 1 : 500   DRG. HF-114 C', [-78, 136.4], 1.5);
+  pen.text(title, [-78, 130], 2.2, { width: 4 });
+  pen.text('SCALE 1 : 400   DRG. HF-114 C', [-78, 126.8], 1.3);
   pen.text('F.S.L. 118.00', [-69, FULL_SUPPLY + 0.8], 1.2);
   pen.text('CREST 122.00', [-12, CREST + 1.2], 1.2);
   pen.text('ROCKFILL, FREE DRAINING', [-46, 102], 1.1);
   pen.text('EARTH', [0.5, 115.4], 1);
   pen.text('GRAVEL BLANKET, TOP 98.00', [22, 95], 1.1);
-  pen.text('BLUE CLAY', [-40, 92], 1.2);
+  pen.text('BLUE CLAY', [-40, 92.4], 1.1);
 }
 
 function drawSetting(pen: Pen): void {
@@ -114,32 +114,32 @@ function drawSetting(pen: Pen): void {
       ],
       { width: 2 },
     );
-    pen.text(offset < 0 ? '70.0 U/S' : '50.0 D/S', [offset - 3.2, BASE - 7.2], 1.1);
+    pen.text(offset < 0 ? '70.0 U/S' : '50.0 D/S', [offset - 3.2, BASE + 2.2], 1);
   }
   pen.line(
     [
-      [-78, 84],
-      [-38, 84],
+      [-78, 89],
+      [-38, 89],
     ],
     { width: 2.4 },
   );
   for (let metre = 0; metre <= 40; metre += 10)
     pen.line(
       [
-        [-78 + metre, 83.3],
-        [-78 + metre, 84.7],
+        [-78 + metre, 88.4],
+        [-78 + metre, 89.6],
       ],
       { width: 2 },
     );
-  pen.text('0', [-78.4, 81.2], 1.2);
-  pen.text('40 M', [-40, 81.2], 1.2);
+  pen.text('0', [-78.4, 86.2], 1.1);
+  pen.text('40 M', [-40, 86.2], 1.1);
   pen.line(
     [
-      [-84, 78],
-      [64, 78],
-      [64, 146],
-      [-84, 146],
-      [-84, 78],
+      [-81, 84.4],
+      [61, 84.4],
+      [61, 134],
+      [-81, 134],
+      [-81, 84.4],
     ],
     { width: 3 },
   );
@@ -159,7 +159,7 @@ export function drawSectionBB(): string {
   return pen.svg();
 }
 
-export const sectionCC: SheetFrame = { ...sectionBB, skewDeg: -0.7, origin: [2210, 1445] };
+export const sectionCC: SheetFrame = { ...sectionBB, skewDeg: -0.7, origin: [2480, 1240] };
 
 /** Section C–C, of the same shape nearer the abutment; no net was ever drawn on it. */
 export function drawSectionCC(): string {

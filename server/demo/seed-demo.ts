@@ -43,7 +43,7 @@ export async function seedDemo(deps: AppDeps): Promise<void> {
     {
       section: sectionCCKnownPoints(),
       entities: [],
-      singles: { setOut: { statedScale: 500, upstream: 'left' } },
+      singles: { setOut: { statedScale: 400, upstream: 'left' } },
     },
   );
   await addDemoNet(deps, spillwayAxis, { id: apron, name: 'Full supply' }, apronNet());
