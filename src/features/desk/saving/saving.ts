@@ -54,7 +54,7 @@ export function startSaving(deps: SavingDeps): Saving {
   let stored: SaveQueue | null = deps.kept;
   let storing: Promise<void> = Promise.resolve();
   let failures = 0;
-  let sending = false;
+  let pumping: Promise<void> | null = null;
   let stopped = false;
   let timer: ReturnType<typeof setTimeout> | null = null;
 
@@ -96,12 +96,16 @@ export function startSaving(deps: SavingDeps): Saving {
     }, pauseMs);
   }
 
-  async function pump(): Promise<void> {
-    if (sending || stopped) return;
-    sending = true;
-    let goOn = true;
-    while (goOn && !stopped) goOn = await sendFirst();
-    sending = false;
+  /** Sends until nothing waits or sending fails; a second call waits for the one under way. */
+  function pump(): Promise<void> {
+    pumping ??= sendAll().finally(() => {
+      pumping = null;
+    });
+    return pumping;
+  }
+
+  async function sendAll(): Promise<void> {
+    while (!stopped && (await sendFirst()));
   }
 
   async function sendFirst(): Promise<boolean> {
@@ -114,7 +118,7 @@ export function startSaving(deps: SavingDeps): Saving {
     if (stopped) return false;
     if (outcome.kind === 'failed') return failed(outcome.failure, outcome.detail);
     failures = 0;
-    state.setState({ failure: null, detail: '', savedAt: deps.now() });
+    state.setState({ failure: null, detail: '' });
     if (outcome.kind === 'refused') change(setAside(queue, outcome.reason));
     else takeAnswer(taken.batch.seq, outcome.result);
     return true;
@@ -124,6 +128,7 @@ export function startSaving(deps: SavingDeps): Saving {
     const through = queue.batches.find((batch) => batch.seq === seq)?.through ?? 0;
     change(answered(queue, seq, result));
     desk.acknowledge(result.outcomes, through);
+    state.setState({ savedAt: deps.now() });
   }
 
   function failed(failure: SendFailure, detail: string): false {

@@ -1,0 +1,104 @@
+import { useStore } from 'zustand';
+import type { NetDetailDto } from '#shared/contract/nets.ts';
+import type { Finding } from '#shared/contract/reading.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+import type { BoundaryKind, ToolId } from '../model/tool-choice.ts';
+import { CountForm } from './count-form.tsx';
+import type { DeskFormProps } from './desk-form.ts';
+import { FindingsPane } from './findings-pane.tsx';
+import { LineForm } from './line-form.tsx';
+import { LoadCasePane } from './load-case-pane.tsx';
+import { PermeabilityForm } from './permeability-form.tsx';
+import { PointForm } from './point-form.tsx';
+import { SetOutForm } from './set-out-form.tsx';
+import { WaterForm } from './water-form.tsx';
+
+/** What is open in the margin in the place of the notes. */
+export type MarginForm =
+  | { form: 'loadCase' | 'setOut' | 'water' | 'permeability' | 'count' | 'point' | 'findings' }
+  | { form: 'line'; lineId: string };
+
+interface MarginFormProps {
+  open: MarginForm;
+  store: DeskStore;
+  detail: NetDetailDto;
+  flush: () => Promise<void>;
+  onOpen: (form: MarginForm) => void;
+  onClose: () => void;
+  /** Shows the sheet, where it is not beside the form already. */
+  onSheet: () => void;
+}
+
+/** The form that is open, wired to the store. */
+export function MarginFormPane({ open, store, detail, flush, onOpen, onClose, onSheet }: MarginFormProps) {
+  const document = useStore(store, (state) => state.document);
+  const reading = useStore(store, (state) => state.reading);
+  const disabled = useStore(store, (state) => state.readOnly);
+  const form: DeskFormProps = {
+    document,
+    reading,
+    disabled,
+    onClose,
+    run: (label, ops) => {
+      store.run(label, ops);
+    },
+  };
+  const take = (tool: ToolId, boundary?: BoundaryKind) => {
+    store.setTool(tool, boundary);
+    onSheet();
+  };
+  const openLine = (lineId: string) => {
+    store.select({ kind: 'line', ids: [lineId] });
+    onOpen({ form: 'line', lineId });
+  };
+  switch (open.form) {
+    case 'loadCase':
+      return <LoadCasePane detail={detail} disabled={disabled} flush={flush} onClose={onClose} />;
+    case 'setOut':
+      return <SetOutForm {...form} onPlace={() => take('knownPoint')} />;
+    case 'water':
+      return (
+        <WaterForm
+          {...form}
+          fullSupplyLevel={detail.dam.fullSupplyLevel}
+          onTrace={(boundary) => take('boundary', boundary)}
+          onOpenLine={openLine}
+        />
+      );
+    case 'permeability':
+      return <PermeabilityForm {...form} />;
+    case 'count':
+      return <CountForm {...form} />;
+    case 'point':
+      return <PointForm {...form} newId={store.newId} />;
+    case 'line':
+      return <LineForm {...form} key={open.lineId} lineId={open.lineId} />;
+    case 'findings':
+      return (
+        <FindingsPane
+          reading={reading}
+          onClose={onClose}
+          onShow={(found) => {
+            showFinding(store, found);
+            onSheet();
+          }}
+        />
+      );
+  }
+}
+
+/** Chooses on the sheet what a finding is about and brings its place into view. */
+export function showFinding(store: DeskStore, found: Finding): void {
+  const { document, reading } = store.getState();
+  const [id] = found.entityIds;
+  const value = id === undefined ? undefined : document.entities[id]?.value;
+  if (id && (value?.kind === 'line' || value?.kind === 'knownPoint' || value?.kind === 'readingPoint')) {
+    store.select({ kind: value.kind, ids: [id] });
+  }
+  const at =
+    found.at ??
+    (value?.kind === 'line' ? value.points[Math.floor(value.points.length / 2)] : undefined) ??
+    (value?.kind === 'knownPoint' ? value.at : undefined) ??
+    reading?.points.find((point) => point.id === id)?.sheetAt;
+  if (at) store.lookAt(at);
+}

@@ -1,0 +1,120 @@
+import { useEffect, useRef } from 'react';
+import { useStore } from 'zustand';
+import { buttonClass } from '#client/components/button.tsx';
+import { useNotice } from '#client/components/notice.tsx';
+import { scheduleText as text } from '#client/text/schedule.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+import { Schedule } from './schedule.tsx';
+import type { Edit } from './schedule-edits.ts';
+import { ENTERED_ORDER, scheduleLead, sortedPoints } from './schedule-rows.ts';
+import { scheduleTsv } from './schedule-text.ts';
+
+interface SchedulePaneProps {
+  store: DeskStore;
+  /** Downloads the schedule as CSV. */
+  onDownload: () => void;
+  /** Opens the form for a typed point; null where nothing may be added. */
+  onAdd: (() => void) | null;
+  className?: string;
+}
+
+/** The schedule below the sheet, with what makes its figures and what may be taken from it. */
+export function SchedulePane({ store, onDownload, onAdd, className = '' }: SchedulePaneProps) {
+  const { document, reading, documentRevision, readingOf, readingFailed, readOnly, selection } =
+    useStore(store);
+  const box = useRef<HTMLElement>(null);
+  const notice = useNotice();
+  const stale = readingOf !== documentRevision;
+  const selectedIds = selection.kind === 'readingPoint' ? selection.ids : [];
+  useSelectedInView(box, selectedIds[0]);
+  const copy = async () => {
+    if (!reading) return;
+    const done = await copyText(scheduleTsv(document, sortedPoints(reading.points, ENTERED_ORDER)));
+    notice(done ? text.copied : text.notCopied);
+  };
+  const edit = (made: Edit) => {
+    store.run(made.label, made.ops);
+  };
+  const select = (id: string) => {
+    if (!selectedIds.includes(id)) store.select({ kind: 'readingPoint', ids: [id] });
+  };
+  return (
+    <section
+      ref={box}
+      aria-label={text.title}
+      aria-busy={stale}
+      className={`overflow-auto bg-film ${className}`}
+    >
+      <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
+        <h2 className="m-0 text-base font-bold">{text.title}</h2>
+        <span className="text-ink-2">{leadOf(document, reading, stale)}</span>
+        <span className="ml-auto flex flex-wrap gap-2">
+          {onAdd ? <SmallButton onClick={onAdd}>{text.add}</SmallButton> : null}
+          <SmallButton onClick={() => void copy()}>{text.copy}</SmallButton>
+          <SmallButton onClick={onDownload}>{text.download}</SmallButton>
+        </span>
+      </div>
+      <ScheduleState reading={reading} failed={readingFailed} />
+      {reading && reading.points.length > 0 ? (
+        <div className={stale ? 'opacity-60' : ''}>
+          <Schedule
+            document={document}
+            reading={reading}
+            onEdit={readOnly ? null : edit}
+            selectedIds={selectedIds}
+            onSelect={select}
+          />
+        </div>
+      ) : null}
+      {reading?.points.length === 0 ? (
+        <p className="m-0 px-2.5 py-1 text-ink-2">{readOnly ? text.emptyReadOnly : text.empty}</p>
+      ) : null}
+      <p className="sticky left-0 m-0 px-2.5 py-2 text-sm text-ink-2">{text.caution}</p>
+    </section>
+  );
+}
+
+function leadOf(document: FlowNetDocument, reading: NetReading | null, stale: boolean): string {
+  const parts = [scheduleLead(document, reading), text.provisional];
+  return (stale ? [...parts, text.workingOut] : parts).join(', ');
+}
+
+/** Says why there is no figure while the net is unfinished: the gravest thing that stands in the way. */
+export function ScheduleState({ reading, failed }: { reading: NetReading | null; failed: boolean }) {
+  if (failed) return <p className="m-0 bg-doubt px-2.5 py-1.5 text-wrong">{text.failed}</p>;
+  if (!reading || reading.state === 'read') return null;
+  const [first] = reading.findings.filter((found) => found.weight === 'wrong' || found.weight === 'missing');
+  return (
+    <p className="sticky left-0 m-0 bg-doubt px-2.5 py-1.5 text-attention">
+      <b className="font-semibold">{text.unfinished}.</b> {first?.text}
+    </p>
+  );
+}
+
+function SmallButton({ onClick, children }: { onClick: () => void; children: string }) {
+  return (
+    <button type="button" className={buttonClass('quiet', 'px-2 py-[2px] text-sm')} onClick={onClick}>
+      {children}
+    </button>
+  );
+}
+
+async function copyText(copied: string): Promise<boolean> {
+  try {
+    await navigator.clipboard.writeText(copied);
+    return true;
+  } catch {
+    // No clipboard on an address that is not secure, or the person said no.
+    return false;
+  }
+}
+
+/** Brings the row of a point into view that was chosen on the sheet. */
+function useSelectedInView(box: React.RefObject<HTMLElement | null>, id: string | undefined): void {
+  useEffect(() => {
+    if (!id || box.current?.contains(document.activeElement)) return;
+    box.current?.querySelector('tr[aria-selected="true"]')?.scrollIntoView({ block: 'nearest' });
+  }, [box, id]);
+}

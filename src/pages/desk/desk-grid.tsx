@@ -1,0 +1,83 @@
+import type { ReactNode } from 'react';
+import { classNames } from '#client/components/class-names.ts';
+import { deskPageText as text } from '#client/text/desk-page.ts';
+
+export type DeskPane = 'sheet' | 'schedule' | 'notes' | 'block';
+const PANES: readonly DeskPane[] = ['sheet', 'schedule', 'notes', 'block'];
+
+interface DeskGridProps {
+  tools: ReactNode;
+  lines: ReactNode;
+  sheet: ReactNode;
+  schedule: ReactNode;
+  notes: ReactNode;
+  block: ReactNode;
+  narrow: boolean;
+  /** The pane shown where they do not fit side by side. */
+  pane: DeskPane;
+  onPane: (pane: DeskPane) => void;
+}
+
+/**
+ * The desk laid out as a sheet: tools at the left, drawing, schedule below it, and in the margin notes over the title
+ * block. On a narrow screen the four become panes of one place; those not shown keep their size, so that the sheet
+ * keeps its view.
+ */
+export function DeskGrid(props: DeskGridProps) {
+  return props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />;
+}
+
+function WideGrid({ tools, lines, sheet, schedule, notes, block }: DeskGridProps) {
+  return (
+    <main
+      id="content"
+      className="grid min-h-0 flex-1 grid-cols-[168px_minmax(0,1fr)_320px] grid-rows-[minmax(0,1fr)_232px] lg:grid-cols-[188px_minmax(0,1fr)_340px] xl:grid-cols-[188px_minmax(0,1fr)_372px]"
+    >
+      <div className="row-span-2 flex min-h-0 flex-col border-r border-rule">{tools}</div>
+      <div className="flex min-h-0 min-w-0 flex-col">
+        {lines}
+        {sheet}
+      </div>
+      <aside className="row-span-2 flex min-h-0 flex-col border-l-[1.5px] border-ink bg-film">
+        {notes}
+        <div className="max-h-[60%] shrink-0 overflow-y-auto">{block}</div>
+      </aside>
+      <div className="min-h-0 min-w-0 border-t border-rule">{schedule}</div>
+    </main>
+  );
+}
+
+function NarrowGrid({ tools, lines, sheet, schedule, notes, block, pane, onPane }: DeskGridProps) {
+  const place = (own: DeskPane) =>
+    classNames('col-start-1 row-start-1 flex min-h-0 min-w-0 flex-col', pane !== own && 'invisible');
+  return (
+    <main id="content" className="flex min-h-0 flex-1 flex-col">
+      {lines}
+      <div className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)] grid-rows-[minmax(0,1fr)]">
+        <div className={place('sheet')}>
+          <div className="shrink-0 border-b border-rule">{tools}</div>
+          {sheet}
+        </div>
+        <div className={place('schedule')}>{schedule}</div>
+        <div className={classNames(place('notes'), 'bg-film')}>{notes}</div>
+        <div className={classNames(place('block'), 'overflow-y-auto bg-film')}>{block}</div>
+      </div>
+      <nav aria-label={text.panesLabel} className="grid shrink-0 grid-cols-4 border-t border-ink bg-film">
+        {PANES.map((each) => (
+          <button
+            key={each}
+            type="button"
+            aria-pressed={each === pane}
+            className={classNames(
+              'min-h-[44px] border-t-[3px] px-1 text-sm',
+              each === pane ? 'border-equipotential bg-chosen font-semibold' : 'border-transparent',
+            )}
+            onClick={() => onPane(each)}
+          >
+            {text.panes[each]}
+          </button>
+        ))}
+      </nav>
+    </main>
+  );
+}

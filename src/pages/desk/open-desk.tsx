@@ -1,0 +1,176 @@
+import { useQuery } from '@tanstack/react-query';
+import { useState } from 'react';
+import { Button } from '#client/components/button.tsx';
+import { useNotice } from '#client/components/notice.tsx';
+import { netQuery } from '#client/features/desk/api/net-queries.ts';
+import { ConflictDialog } from '#client/features/desk/components/conflict-dialog.tsx';
+import { MarginFormPane } from '#client/features/desk/components/margin-form.tsx';
+import { ReadOnlyLine } from '#client/features/desk/components/read-only-line.tsx';
+import { SavingLine } from '#client/features/desk/components/saving-line.tsx';
+import { SchedulePane } from '#client/features/desk/components/schedule-pane.tsx';
+import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
+import { StoreNotice } from '#client/features/desk/components/store-notice.tsx';
+import { ToolPalette } from '#client/features/desk/components/tool-palette.tsx';
+import { useSavingMoments } from '#client/features/desk/components/use-saving-moments.ts';
+import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
+import { NotesList } from '#client/features/notes/components/notes-list.tsx';
+import { downloadFrom } from '#client/lib/download.ts';
+import { apiUrl } from '#client/lib/http.ts';
+import { paths } from '#client/lib/paths.ts';
+import { useMedia } from '#client/lib/use-media.ts';
+import { commonText } from '#client/text/common.ts';
+import { deskPageText as text } from '#client/text/desk-page.ts';
+import { sendingText } from '#client/text/revisions.ts';
+import type { NetDetailDto } from '#shared/contract/nets.ts';
+import { AppFrame } from '../app-frame.tsx';
+import { DeskGrid } from './desk-grid.tsx';
+import { DeskTitleBlock } from './desk-title-block.tsx';
+import { RevisionsPane } from './revisions-pane.tsx';
+import { SendForChecking } from './send-for-checking.tsx';
+import { useDeskLive } from './use-desk-live.ts';
+import { useDeskNotes } from './use-desk-notes.ts';
+import { useMargin } from './use-margin.ts';
+
+/** Below this the parts of the desk do not fit side by side; the same measure as the styles' `md`. */
+const NARROW = '(max-width: 819.98px)';
+
+interface OpenDeskProps {
+  netId: string;
+  session: DeskSession;
+  takeOver: () => void;
+}
+
+export function OpenDesk(props: OpenDeskProps) {
+  const detail = useQuery(netQuery(props.netId)).data;
+  return detail ? <DeskParts {...props} detail={detail} /> : null;
+}
+
+function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detail: NetDetailDto }) {
+  const { store, saving, readOnly } = session;
+  const narrow = useMedia(NARROW);
+  const [dialog, setDialog] = useState<'none' | 'send' | 'compare'>('none');
+  const notes = useDeskNotes(netId, store);
+  const { margin, pane, setPane, show, close } = useMargin(store, narrow, notes);
+  const notice = useNotice();
+  const flush = async () => saving?.flush();
+  useDeskLive(netId, session);
+  useSavingMoments(saving);
+
+  const { section, drawing, sheet } = detail;
+  const sectionName = text.sectionAt(section.name, section.chainage);
+  const drawingName = text.drawingRevision(drawing.number || text.untitledDrawing, drawing.revision);
+  const closeForm = () => {
+    close();
+    setPane('block');
+  };
+
+  return (
+    <div className="flex h-dvh flex-col overflow-hidden">
+      <title>{`${sectionName}, ${detail.net.name} – ${commonText.product}`}</title>
+      <AppFrame
+        trail={[
+          { label: detail.dam.name, to: paths.dam(detail.dam.id) },
+          { label: drawingName, to: paths.drawing(drawing.id, sheet.pageNumber) },
+          { label: `${sectionName}, ${detail.net.name}` },
+        ]}
+        end={
+          <>
+            {saving ? (
+              <SavingLine saving={saving} store={store} onCompare={() => setDialog('compare')} />
+            ) : null}
+            {detail.can.includes('net.send') && readOnly === null ? (
+              <Button look="main" onClick={() => setDialog('send')}>
+                {sendingText.button}
+              </Button>
+            ) : null}
+          </>
+        }
+      >
+        <DeskGrid
+          narrow={narrow}
+          pane={pane}
+          onPane={setPane}
+          tools={
+            <ToolPalette
+              store={store}
+              layout={narrow ? 'row' : 'column'}
+              className={narrow ? '' : 'flex-1'}
+            />
+          }
+          lines={
+            <>
+              {readOnly ? <ReadOnlyLine reason={readOnly} onTakeOver={takeOver} /> : null}
+              <StoreNotice store={store} />
+            </>
+          }
+          sheet={
+            <SheetView
+              key={sheet.id}
+              store={store}
+              sheet={sheet}
+              frame={section.frame}
+              notes={notes.balloons}
+              label={text.sheetLabel(sectionName, drawingName)}
+              className="min-h-0 flex-1"
+            />
+          }
+          schedule={
+            <SchedulePane
+              store={store}
+              className="h-full"
+              onDownload={() => void flush().then(() => downloadFrom(apiUrl(`/nets/${netId}/schedule.csv`)))}
+              onAdd={readOnly ? null : () => show({ shows: 'form', form: { form: 'point' } })}
+            />
+          }
+          notes={
+            margin.shows === 'form' ? (
+              <MarginFormPane
+                open={margin.form}
+                store={store}
+                detail={detail}
+                flush={flush}
+                onOpen={(form) => show({ shows: 'form', form })}
+                onClose={closeForm}
+                onSheet={() => setPane('sheet')}
+              />
+            ) : margin.shows === 'revisions' ? (
+              <RevisionsPane netId={netId} onClose={closeForm} />
+            ) : (
+              <NotesList
+                netId={netId}
+                notes={notes.notes}
+                targetOf={notes.targetOf}
+                canWrite={detail.can.includes('note.write')}
+                chosenId={notes.chosenId}
+                onChoose={(note) => {
+                  notes.choose(note);
+                  setPane('sheet');
+                }}
+                writingAt={notes.writingAt}
+                onWritten={(note) => {
+                  notes.setWritingAt(null);
+                  if (note) notes.setChosenId(note.id);
+                }}
+              />
+            )
+          }
+          block={<DeskTitleBlock detail={detail} session={session} margin={margin} onShow={show} />}
+        />
+      </AppFrame>
+      {dialog === 'compare' && saving ? (
+        <ConflictDialog store={store} saving={saving} onClose={() => setDialog('none')} />
+      ) : null}
+      {dialog === 'send' ? (
+        <SendForChecking
+          netId={netId}
+          session={session}
+          onClose={() => setDialog('none')}
+          onSent={(revision) => {
+            setDialog('none');
+            notice(sendingText.sent(revision.label, revision.reviewer.name));
+          }}
+        />
+      ) : null}
+    </div>
+  );
+}
