@@ -31,6 +31,8 @@ export default defineConfig({
           globalSetup: ['tests/support/cluster.ts', 'tests/support/built-client.ts'],
           // One browser and one server at a time: on two cores a second pair only makes both slow.
           fileParallelism: false,
+          // After the others, so that what is timed in a browser has the machine to itself.
+          sequence: { groupOrder: 1 },
           testTimeout: 120_000,
         },
       },

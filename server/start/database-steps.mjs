@@ -47,8 +47,7 @@ export async function prepareDatabase(root, storageDir, database) {
   }
   const isProduction = database.ownerEnv.NODE_ENV === 'production';
   if (isProduction || existsSync(startFiles(storageDir).demoSignIns)) return;
-  if (!existsSync(path.join(root, 'server', 'scripts', 'seed.ts'))) return;
-  say('Looking whether the database is empty, and drawing the demo if so.');
+  say('Drawing the demo, if nobody is in the database yet.');
   await runScript(root, 'seed', 'filled with the demo', database.ownerEnv);
 }
 

@@ -1,4 +1,4 @@
-import { existsSync, mkdirSync } from 'node:fs';
+import { mkdirSync } from 'node:fs';
 import path from 'node:path';
 import { claimStorage } from './already-running.mjs';
 import { clientDir, ensureClient } from './client-build.mjs';
@@ -53,19 +53,15 @@ await live(storageDir, async (life) => {
 /** @param {string} address @param {string | null} logFile */
 function welcome(address, logFile) {
   say(`\nTracehead is ready at ${process.env.PUBLIC_URL || address}\n`);
-  const { demoSignIns } = startFiles(storageDir);
-  if (process.env.NODE_ENV !== 'production' && existsSync(demoSignIns)) {
-    say('Demo sign-ins:');
-    for (const line of signInLines(readJson(demoSignIns) ?? [])) say(`  ${line}`);
-    say('');
-  }
+  const signIns = process.env.NODE_ENV === 'production' ? [] : readJson(startFiles(storageDir).demoSignIns);
+  if (signIns?.length) say(`Demo sign-ins:\n${signInLines(signIns).join('\n')}\n`);
   if (logFile) say(`The log is in ${path.relative(process.cwd(), logFile)}. Ctrl-C stops everything.`);
 }
 
 /** @param {Array<{name: string, email: string, password: string, part: string}>} people */
 function signInLines(people) {
-  const width = Math.max(0, ...people.map((person) => person.email.length));
+  const width = Math.max(...people.map((person) => person.email.length));
   return people.map((person) => {
-    return `${person.email.padEnd(width)}  ${person.password}  ${person.name}, ${person.part}`;
+    return `  ${person.email.padEnd(width)}  ${person.password}  ${person.name}, ${person.part}`;
   });
 }
