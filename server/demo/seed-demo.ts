@@ -31,8 +31,8 @@ export async function seedDemo(deps: AppDeps): Promise<void> {
   const [apronSheet = ''] = await addDemoDrawing(deps, 'spillway');
   await addDemoDrawing(deps, 'raising');
 
-  await addDemoSection(deps, { id: sectionB, sheetId: sheetB, name: 'Section B–B', chainage: '212' });
-  await addDemoSection(deps, { id: sectionC, sheetId: sheetC, name: 'Section C–C', chainage: '305' });
+  await addDemoSection(deps, { id: sectionB, sheetId: sheetB, name: 'B–B', chainage: '212' });
+  await addDemoSection(deps, { id: sectionC, sheetId: sheetC, name: 'C–C', chainage: '305' });
   await addDemoSection(deps, { id: spillwayAxis, sheetId: apronSheet, name: 'Spillway axis', chainage: '' });
   await addDemoNet(deps, sectionB, { id: fullSupply, name: 'Full supply' }, fullSupplyNet());
   await addDemoNet(deps, sectionB, { id: redrawn, name: 'Redrawn for the review' }, halfTracedNet());
