@@ -18,7 +18,7 @@ export class BandRaster {
   }
 
   static async create(file: string, widthPx: number, heightPx: number): Promise<BandRaster> {
-    const handle = await open(file, 'wx');
+    const handle = await open(file, 'w');
     await handle.write(tiffHeader(widthPx, heightPx));
     return new BandRaster(handle, widthPx * 3);
   }

@@ -1,5 +1,6 @@
 import { type ChildProcess, fork } from 'node:child_process';
 import { createRequire } from 'node:module';
+import type { Socket } from 'node:net';
 import type { Readable } from 'node:stream';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { RENDER_MEMORY_BYTES, RENDER_SECONDS } from '#shared/contract/limits.ts';
@@ -90,6 +91,7 @@ class ForkedRenderProcess implements RenderProcess {
   async #give(order: RenderOrder, { signal, onProgress }: OrderOptions): Promise<RenderAnswer> {
     signal?.throwIfAborted();
     const child = this.#started();
+    keepsParentAlive(child, true);
     this.#peak = 0;
     this.#logBytes = 0;
     this.#log = '';
@@ -117,6 +119,7 @@ class ForkedRenderProcess implements RenderProcess {
       });
     } finally {
       for (const stop of stops) stop();
+      keepsParentAlive(child, false);
     }
   }
 
@@ -158,6 +161,15 @@ class ForkedRenderProcess implements RenderProcess {
       this.#logBytes += chunk.length;
       if (this.#log.length < KEPT_LOG) this.#log += chunk.toString('utf8').slice(0, KEPT_LOG);
     });
+  }
+}
+
+/** An idle process must not keep the server from ending; it ends itself when its parent has gone. */
+function keepsParentAlive(child: ChildProcess, isNeeded: boolean): void {
+  const handles = [child, child.channel, child.stdout as Socket | null, child.stderr as Socket | null];
+  for (const handle of handles) {
+    if (isNeeded) handle?.ref();
+    else handle?.unref();
   }
 }
 

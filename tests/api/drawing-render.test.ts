@@ -5,6 +5,7 @@ import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { RenderJobEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
 import { createRenderProcess, type RenderProcess } from '#server/imaging/render-process.ts';
 import { createRenderDrawingHandler } from '#server/jobs/handlers/render-drawing.ts';
+import type { JobHandler } from '#server/jobs/jobs-port.ts';
 import { requeueRenderJobs } from '#server/services/render-job-service.ts';
 import { readingDeps } from '#server/services/service-deps.ts';
 import { g4Drawing, pdfDrawing, pngDrawing } from '#tests/support/drawing-files.ts';
@@ -20,12 +21,15 @@ beforeAll(async () => {
   caller = engineer.caller;
   damId = await addDam(app.db, engineer.person.id);
   await addMember(app.db, damId, engineer.person.id, 'engineer');
+  render = rendering();
 });
 afterAll(() => app.close());
 
 const never = new AbortController().signal;
-const rendering = (createProcess: () => RenderProcess = createRenderProcess) =>
+const rendering = (createProcess?: () => RenderProcess) =>
   createRenderDrawingHandler(app.deps, createProcess);
+/** As the server has it: one handler for all jobs. */
+let render: JobHandler;
 const jobs = () => app.db.getRepository(RenderJobEntity);
 
 async function uploaded(bytes: Buffer, name = 'scan'): Promise<{ drawingId: string; jobId: string }> {
@@ -67,7 +71,7 @@ afterEach(() => expect(leftovers()).toEqual([]));
 
 describe('the job that makes sheets', () => {
   it('does nothing for a row that is not there', async () => {
-    await rendering()('01890000-0000-7000-8000-000000000000', never);
+    await render('01890000-0000-7000-8000-000000000000', never);
   });
 
   it.each([
@@ -81,7 +85,7 @@ describe('the job that makes sheets', () => {
   ])('refuses %s in a sentence and leaves no sheet and no tile', async (_name, bytes, words) => {
     const tiles = tileFolders().length;
     const { drawingId, jobId } = await uploaded(await bytes());
-    await rendering()(jobId, never);
+    await render(jobId, never);
     const { job, sheets } = await drawing(drawingId);
     expect(job.state).toBe('refused');
     expect(job.message).toMatch(words);
@@ -98,7 +102,7 @@ describe('the job that makes sheets', () => {
 
   it('makes one sheet of a scan, in its own pixels', async () => {
     const { drawingId, jobId } = await uploaded(await g4Drawing({ width: 1300, height: 900, dpi: 300 }));
-    await rendering()(jobId, never);
+    await render(jobId, never);
     const { job, sheets } = await drawing(drawingId);
     expect(job).toEqual({ state: 'done', pagesTotal: 1, pagesDone: 1, pageProgress: 0, message: '' });
     expect(sheets).toHaveLength(1);
@@ -120,7 +124,7 @@ describe('the job that makes sheets', () => {
       { width: 144, height: 72, rotate: 90 },
     ];
     const { drawingId, jobId } = await uploaded(pdfDrawing(pages));
-    await rendering()(jobId, never);
+    await render(jobId, never);
     const { job, sheets } = await drawing(drawingId);
     expect(job).toMatchObject({ state: 'done', pagesTotal: 2, pagesDone: 2 });
     // 2 in × 1 in at 300 dpi.
@@ -136,7 +140,7 @@ describe('the job that makes sheets', () => {
       { width: 144, height: 72, brokenPicture: true },
     ];
     const { drawingId, jobId } = await uploaded(pdfDrawing(pages));
-    await rendering()(jobId, never);
+    await render(jobId, never);
     const { job, sheets } = await drawing(drawingId);
     expect(job).toMatchObject({ state: 'done', pagesTotal: 2 });
     expect(job.message).toMatch(/^Page 2 of 2 was left out\. A picture/);
@@ -175,14 +179,14 @@ describe('the job that makes sheets', () => {
       { id: jobId },
       { state: 'running', runId, attempts: 1, leaseUntil: new Date(Date.now() + 20_000) },
     );
-    await rendering()(jobId, never);
+    await render(jobId, never);
     expect((await drawing(drawingId)).sheets).toEqual([]);
     app.jobs.queued.length = 0;
     await requeueRenderJobs(readingDeps(app.deps));
     const queued = app.jobs.queued.find((each) => each.rowId === jobId);
     expect(queued?.afterSeconds).toBeGreaterThan(15);
     await jobs().update({ id: jobId }, { leaseUntil: new Date(Date.now() - 1000) });
-    await rendering()(jobId, never);
+    await render(jobId, never);
     expect((await drawing(drawingId)).job.state).toBe('done');
     app.jobs.queued.length = 0;
     await requeueRenderJobs(readingDeps(app.deps));
@@ -208,7 +212,7 @@ describe('the job that makes sheets', () => {
     const { drawingId, jobId } = await uploaded(await pngDrawing({ seed: 5 }));
     const dead = { state: 'running', attempts: 3, leaseUntil: new Date(0) } as const;
     await jobs().update({ id: jobId }, { ...dead, runId: '01890000-0000-7000-8000-000000000002' });
-    await rendering()(jobId, never);
+    await render(jobId, never);
     expect((await drawing(drawingId)).job.state).toBe('failed');
   });
 });
@@ -220,7 +224,7 @@ describe('the files of a sheet', () => {
     const png = await pngDrawing({ width: 700, height: 500, seed: 9 });
     const ids = await uploaded(png, 'Schnitt B–B "alt".png');
     drawingId = ids.drawingId;
-    await rendering()(ids.jobId, never);
+    await render(ids.jobId, never);
     const sheet = await app.db.getRepository(SheetEntity).findOneByOrFail({ drawingId });
     sheetId = sheet.id;
   });

@@ -3,7 +3,8 @@ import { mkdir, rm } from 'node:fs/promises';
 import path from 'node:path';
 import type { AppDeps } from '#server/app-deps.ts';
 import { RenderRefusal } from '#server/imaging/refusal.ts';
-import type { RenderProcess } from '#server/imaging/render-process.ts';
+import { createRenderPool } from '#server/imaging/render-pool.ts';
+import { createRenderProcess, type RenderProcess } from '#server/imaging/render-process.ts';
 import type { ProbedPage, ProbeResult } from '#server/imaging/render-types.ts';
 import type { JobHandler } from '#server/jobs/jobs-port.ts';
 import { createRenderJobService, type HeldJob, LEASE_MS } from '#server/services/render-job-service.ts';
@@ -21,20 +22,28 @@ type Jobs = ReturnType<typeof createRenderJobService>;
  * Turns an uploaded drawing into sheets. Its row of `render_job` is the truth: a run holds it by a lease, pages that
  * are sheets already are not drawn again, and whatever ends the run leaves either finished sheets or none.
  */
-export function createRenderDrawingHandler(deps: AppDeps, createProcess: () => RenderProcess): JobHandler {
+export function createRenderDrawingHandler(
+  deps: AppDeps,
+  createProcess: () => RenderProcess = createRenderProcess,
+): JobHandler {
+  const pool = createRenderPool(createProcess);
   const rows = <T>(work: (jobs: Jobs) => Promise<T>) =>
     inTransaction(deps, (tx) => work(createRenderJobService(tx)));
 
   return async (jobId, signal) => {
     const job = await rows((jobs) => jobs.claim(jobId, randomUUID()));
     if (!job) return;
-    const run = startRun(job, signal, rows, deps, createProcess());
+    const renderer = pool.take();
+    let isSound = false;
+    const run = startRun(job, signal, rows, deps, renderer);
     try {
       const message = await run.renderPages();
       await rows((jobs) => jobs.finish(job, message));
+      isSound = message === '';
     } catch (error) {
       await settle(error, job, signal);
     } finally {
+      pool.giveBack(renderer, isSound);
       await run.end();
     }
   };
@@ -111,7 +120,6 @@ function startRun(job: HeldJob, outer: AbortSignal, rows: Rows, deps: AppDeps, r
     renderPages,
     async end(): Promise<void> {
       clearInterval(heartbeat);
-      renderer.close();
       await rm(folder, { recursive: true, force: true });
     },
   };

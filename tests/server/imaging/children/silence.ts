@@ -1,0 +1,2 @@
+/** A rendering process that never answers. */
+process.on('message', () => undefined);
