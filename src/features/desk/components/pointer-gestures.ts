@@ -97,7 +97,8 @@ export function attachGestures(target: GestureTarget): () => void {
     }
     if (fingers.has(event.pointerId)) fingers.set(event.pointerId, at);
     lastAt = at;
-    target.onPointer(sheetAt(at), keysOf(event), viewFor(event.pointerType));
+    // While the sheet is dragged the same place of it stays under the pointer.
+    if (mode !== 'pan') target.onPointer(sheetAt(at), keysOf(event), viewFor(event.pointerType));
   }
 
   function pinch(pointerId: number, at: ScreenPx): void {

@@ -4,6 +4,7 @@ import {
   centredOn,
   fitFrame,
   keptInSight,
+  onWholePixels,
   panBy,
   resized,
   type SheetFrame,
@@ -32,7 +33,9 @@ export function createViewStore(sheet: SheetSize, frame: SheetFrame | null): Vie
   const unmeasured: Viewport = { zoom: 1, origin: sheetPx(0, 0), widthPx: 0, heightPx: 0 };
   const store = createStore<ViewState>(() => ({ view: unmeasured }));
   const set = (view: Viewport) => {
-    if (view !== store.getState().view) store.setState({ view });
+    if (view !== store.getState().view) {
+      store.setState({ view: onWholePixels(view, globalThis.devicePixelRatio || 1) });
+    }
   };
   const now = () => store.getState().view;
   return {

@@ -93,3 +93,16 @@ function heldAxis(start: number, seen: number, whole: number, least: number): nu
 function heldZoom(zoom: number, smallest: number): number {
   return Math.min(MAX_ZOOM, Math.max(smallest, zoom));
 }
+
+/**
+ * The view moved by less than a device pixel so that the sheet begins on a whole one: the tiles lie on whole pixels,
+ * and what is drawn and clicked must lie where they do.
+ */
+export function onWholePixels(view: Viewport, devicePixelRatio: number): Viewport {
+  const scale = view.zoom * devicePixelRatio;
+  const origin = sheetPx(
+    Math.round(view.origin[0] * scale) / scale,
+    Math.round(view.origin[1] * scale) / scale,
+  );
+  return { ...view, origin };
+}

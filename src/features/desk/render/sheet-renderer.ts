@@ -1,11 +1,11 @@
-import { StaticCanvas } from 'fabric';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { Viewport } from '../model/viewport.ts';
-import { createFabricScenes } from './fabric-sink.ts';
-import { tileLoader } from './load-tile.ts';
+import { type LoadedTile, tileLoader } from './load-tile.ts';
 import type { SceneItem } from './scene.ts';
+import { createTileLayer } from './tile-layer.ts';
 import { paintTiles, wantedTiles } from './tile-painter.ts';
 import { createTileStore, type TileStore } from './tile-store.ts';
+import { createTraceCanvas } from './trace-canvas.ts';
 
 /** Decoded tiles kept: a screen of 4K needs about 60 MB of them. */
 const TILE_MEMORY_BYTES = 160 * 1024 * 1024;
@@ -26,37 +26,30 @@ export type SheetRenderer = {
 };
 
 /**
- * Draws the sheet and what lies over it into two canvases of a host element: the tiles below, fabric above, both
- * under the same viewport. It draws only when something has changed and at most once a frame.
+ * Shows the sheet and what lies over it in a host element: the tiles below, fabric above, both under the same
+ * viewport. It draws only when something has changed and at most once a frame.
  */
 export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRenderer {
-  const tileCanvas = host.ownerDocument.createElement('canvas');
-  const fabricCanvas = host.ownerDocument.createElement('canvas');
-  for (const canvas of [tileCanvas, fabricCanvas]) {
-    canvas.setAttribute('aria-hidden', 'true');
-    Object.assign(canvas.style, { position: 'absolute', inset: '0', width: '100%', height: '100%' });
-    host.append(canvas);
-  }
-  const context = tileCanvas.getContext('2d', { alpha: false })!;
-  const fabric = new StaticCanvas(fabricCanvas, { renderOnAddRemove: false, enableRetinaScaling: true });
-  const scenes = createFabricScenes(fabric);
+  const { fonts } = host.ownerDocument;
   const extraViews = new Map<string, () => void>();
   let view: Viewport | null = null;
   let scheduled = 0;
-  let tilesDirty = false;
-  let objectsDirty = false;
+  let tilesDue = false;
+  let tracesDue = false;
   let overlaid = false;
 
-  const store: TileStore<ImageBitmap> = createTileStore({
+  const store: TileStore<LoadedTile> = createTileStore({
     load: tileLoader(sheet),
     memoryLimitBytes: TILE_MEMORY_BYTES,
     concurrency: TILE_REQUESTS,
     onArrival() {
-      tilesDirty = true;
+      tilesDue = true;
       schedule();
       for (const paint of extraViews.values()) paint();
     },
   });
+  const tiles = createTileLayer(host, sheet, store);
+  const traces = createTraceCanvas(host);
 
   function schedule(): void {
     if (scheduled === 0) scheduled = requestAnimationFrame(drawFrame);
@@ -64,41 +57,37 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
 
   function drawFrame(): void {
     scheduled = 0;
-    if (view === null) return;
-    if (tilesDirty) paintTiles(context, sheet, store, view, ratio());
-    if (objectsDirty) fabric.renderAll();
-    tilesDirty = false;
-    objectsDirty = false;
+    if (tilesDue) tiles.refresh();
+    if (tracesDue) traces.draw();
+    tilesDue = false;
+    tracesDue = false;
   }
 
-  function resize(next: Viewport): void {
-    tileCanvas.width = Math.round(next.widthPx * ratio());
-    tileCanvas.height = Math.round(next.heightPx * ratio());
-    fabric.setDimensions({ width: next.widthPx, height: next.heightPx });
+  function traceAgain(): void {
+    tracesDue = true;
+    schedule();
   }
+
+  // A canvas takes a fallback font for one that is still loading, and does not draw again by itself.
+  fonts.addEventListener('loadingdone', traceAgain);
 
   return {
     setView(next) {
-      if (view === null || view.widthPx !== next.widthPx || view.heightPx !== next.heightPx) resize(next);
       view = next;
-      const { zoom, origin } = next;
-      fabric.setViewportTransform([zoom, 0, 0, zoom, -origin[0] * zoom, -origin[1] * zoom]);
       store.want('main', wantedTiles(sheet, next, ratio(), AHEAD_TILES));
-      tilesDirty = true;
-      objectsDirty = true;
-      schedule();
+      tiles.show(next);
+      if (!traces.show(next)) traceAgain();
     },
     showBase(items) {
-      scenes.showBase(items);
-      objectsDirty = true;
-      schedule();
+      traces.showBase(items);
+      if (view !== null) traceAgain();
     },
     showOverlay(items) {
+      // Without this a bare movement of the pointer would draw everything again.
       if (items.length === 0 && !overlaid) return;
       overlaid = items.length > 0;
-      scenes.showOverlay(items);
-      objectsDirty = true;
-      schedule();
+      traces.showOverlay(items);
+      traceAgain();
     },
     addView(name, paint) {
       extraViews.set(name, paint);
@@ -114,10 +103,10 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
     isWaiting: () => store.isWaiting(),
     destroy() {
       cancelAnimationFrame(scheduled);
+      fonts.removeEventListener('loadingdone', traceAgain);
       store.close();
-      void fabric.dispose();
-      tileCanvas.remove();
-      fabricCanvas.remove();
+      tiles.destroy();
+      traces.destroy();
     },
   };
 }

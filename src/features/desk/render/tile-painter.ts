@@ -1,5 +1,6 @@
 import { sheetPx } from '#shared/compute/frames.ts';
 import { seenFrame, toScreen, type Viewport } from '../model/viewport.ts';
+import type { LoadedTile } from './load-tile.ts';
 import {
   levelFor,
   levelScale,
@@ -9,10 +10,9 @@ import {
   tileFrame,
   tilesIn,
 } from './tile-grid.ts';
+import { SQUARES_FROM_ZOOM } from './tile-layer.ts';
 import type { TileStore } from './tile-store.ts';
 
-/** From here on each pixel of the scan is shown as a square: blurring it would hide where it ends. */
-const SQUARES_FROM_ZOOM = 4;
 const DESK_COLOUR = '#cfd6d5';
 const EMPTY_SHEET_COLOUR = '#f1eee4';
 
@@ -32,11 +32,14 @@ export function wantedTiles(
   return [{ z: 0, x: 0, y: 0 }, ...inSight, ...around];
 }
 
-/** Paints the sheet as far as its tiles are there; where one is missing, the next coarser one stands in. */
+/**
+ * Paints a small part of the sheet into a canvas, for the magnified view, as far as its tiles are there; where one is
+ * missing, the next coarser one stands in.
+ */
 export function paintTiles(
   context: CanvasRenderingContext2D,
   sheet: TiledSheet,
-  store: TileStore<ImageBitmap>,
+  store: TileStore<LoadedTile>,
   view: Viewport,
   devicePixelRatio: number,
 ): void {
@@ -56,7 +59,7 @@ export function paintTiles(
 function paintTile(
   context: CanvasRenderingContext2D,
   sheet: TiledSheet,
-  store: TileStore<ImageBitmap>,
+  store: TileStore<LoadedTile>,
   view: Viewport,
   ratio: number,
   tile: Tile,
@@ -78,7 +81,7 @@ function paintPart(
   ratio: number,
   tile: Tile,
   source: Tile,
-  picture: ImageBitmap,
+  picture: LoadedTile,
 ): void {
   const scale = levelScale(sheet, source.z);
   const [tileLeft, tileTop, side] = tileFrame(sheet, tile);
@@ -91,7 +94,7 @@ function paintPart(
   if (width <= 0 || height <= 0) return;
   const [left, top] = onDevice(view, tileLeft, tileTop, ratio);
   const [right, bottom] = onDevice(view, tileLeft + width / scale, tileTop + height / scale, ratio);
-  context.drawImage(picture, fromX, fromY, width, height, left, top, right - left, bottom - top);
+  context.drawImage(picture.image, fromX, fromY, width, height, left, top, right - left, bottom - top);
 }
 
 function onDevice(view: Viewport, x: number, y: number, ratio: number): [number, number] {

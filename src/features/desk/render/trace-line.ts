@@ -61,10 +61,13 @@ export class TraceLine extends Polyline {
     const first = points[0];
     const last = points.at(-1);
     if (look.end === 'none' || first === undefined || last === undefined) return;
-    endMark(context, look.end, first, points[1] ?? first, look.colour, zoom);
-    if (look.end !== 'level' && points.length > 1) {
-      endMark(context, look.end, last, points.at(-2) ?? last, look.colour, zoom);
+    if (look.end === 'level') {
+      // A water level stands where the water ends: at the upper end of a face, at the start of a phreatic line.
+      endMark(context, look.end, last[1] < first[1] ? last : first, first, look.colour, zoom);
+      return;
     }
+    endMark(context, look.end, first, points[1] ?? first, look.colour, zoom);
+    if (points.length > 1) endMark(context, look.end, last, points.at(-2) ?? last, look.colour, zoom);
   }
 }
 
