@@ -178,12 +178,12 @@ function unordered(id: string): LineReading {
 }
 
 function linesRead(model: NetModel, heads: NetHeads): LineReading[] {
-  const ids = [
-    ...model.potentials.map((potential) => potential.id),
-    ...model.equipotentials.map((line) => line.id),
-  ];
-  return ids.map((id) => {
-    const line = heads.byId.get(id);
+  const boundaries = model.potentials.flatMap(({ id, members }) =>
+    members.map((member) => ({ id: member, of: id })),
+  );
+  const traced = model.equipotentials.map(({ id }) => ({ id, of: id }));
+  return [...boundaries, ...traced].map(({ id, of }) => {
+    const line = heads.byId.get(of);
     if (line !== undefined) return { id, drops: line.drops, head: line.head, source: line.source };
     return numberedByPlace(model, id);
   });

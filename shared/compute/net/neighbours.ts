@@ -8,6 +8,8 @@ export type HeadLine = {
   readonly id: string;
   readonly shape: Polyline;
   readonly role: 'equipotential' | 'headwater' | 'outlet';
+  /** True where the head is the elevation and varies along the line. */
+  readonly varies: boolean;
 };
 
 /** Side of a line: 0 is the left hand in the direction of its points as seen on the sheet, 1 the right hand. */

@@ -2,6 +2,7 @@ import { makeFinding } from '#shared/compute/findings.ts';
 import type { Polyline } from '#shared/compute/geometry/polyline.ts';
 import { type CarrierGraph, carrierGraph } from '#shared/compute/net/carrier-graph.ts';
 import { type Carrier, carryToFeet, type FootedLine } from '#shared/compute/net/feet.ts';
+import { joinBoundaries } from '#shared/compute/net/join-boundaries.ts';
 import { type HeadLine, neighbourLinks } from '#shared/compute/net/neighbours.ts';
 import { checkLines } from '#shared/compute/net/net-checks.ts';
 import { linesOfKind, medianLength, type NetLine, netLinesOf } from '#shared/compute/net/net-lines.ts';
@@ -45,9 +46,10 @@ export function modelNet(
   const lines = netLinesOf(document);
   const walls = linesOfKind(lines, 'impervious', 'phreaticLine');
   const flowLines = linesOfKind(lines, 'flowLine');
-  const { all: potentials, findings } = potentialsOf(lines, map, water, accuracyPx);
+  const { all, findings } = potentialsOf(lines, map, water, accuracyPx);
   const traced = linesOfKind(lines, 'equipotential');
   const reach = Math.max(3 * accuracyPx, REACH_PART * medianLength(traced.length > 0 ? traced : lines));
+  const potentials = joinBoundaries(all, reach);
   const carriers = carriersOf(walls, flowLines, potentials);
   const equipotentials = traced.map(
     (line): Equipotential => ({ id: line.id, line, footed: carryToFeet(line.shape, carriers, reach) }),
@@ -94,8 +96,12 @@ function carriersOf(
 
 function headLines(equipotentials: readonly Equipotential[], potentials: readonly Potential[]): HeadLine[] {
   return [
-    ...potentials.map(({ id, shape, role }): HeadLine => ({ id, shape, role })),
-    ...equipotentials.map(({ id, footed }): HeadLine => ({ id, shape: footed.shape, role: 'equipotential' })),
+    ...potentials.map(
+      ({ id, shape, role, level }): HeadLine => ({ id, shape, role, varies: level === null }),
+    ),
+    ...equipotentials.map(
+      ({ id, footed }): HeadLine => ({ id, shape: footed.shape, role: 'equipotential', varies: false }),
+    ),
   ];
 }
 

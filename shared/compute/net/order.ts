@@ -38,13 +38,13 @@ export function orderAlongFlow(heads: readonly HeadLine[], links: readonly Neigh
   for (let step = 1; front.length > 0; step += 1) {
     const next = new Map<string, Side | null>();
     for (const { id, leaveBy } of front) {
-      for (const { to, enterBy, sameDirection } of leaving(id, leaveBy, links)) {
-        const line = byId.get(to)!;
-        if (line.role === 'headwater' || (place.get(to) ?? step) < step) continue;
+      for (const { to, enterBy, sameDirection } of onward(leaving(id, leaveBy, links), byId)) {
+        const isOutlet = byId.get(to)!.role === 'outlet';
+        if (!isOutlet && (place.get(to) ?? step) < step) continue;
         pairs.push({ before: id, after: to, sameDirection });
-        if (place.has(to)) continue;
+        if (!isOutlet && place.has(to)) continue;
         place.set(to, step);
-        if (line.role !== 'equipotential') continue;
+        if (isOutlet) continue;
         sequence.push(to);
         next.set(to, enterBy === 0 ? 1 : 0);
       }
@@ -60,6 +60,18 @@ export function orderAlongFlow(heads: readonly HeadLine[], links: readonly Neigh
     deadEnds: sequence.filter((id) => !pairs.some((pair) => pair.before === id)),
     outlets: heads.filter((line) => line.role === 'outlet' && place.has(line.id)).map((line) => line.id),
   };
+}
+
+/**
+ * The steps that lead on. A face of free outflow runs along the ends of many lines; only the last of them, from which no
+ * other line follows, gives its water to it.
+ */
+function onward(steps: readonly Step[], byId: ReadonlyMap<string, HeadLine>): Step[] {
+  const lines = steps.map((step) => ({ step, line: byId.get(step.to)! }));
+  const followed = lines.some(({ line }) => line.role === 'equipotential');
+  return lines
+    .filter(({ line }) => line.role !== 'headwater' && !(followed && line.varies))
+    .map(({ step }) => step);
 }
 
 type Step = { to: string; enterBy: Side; sameDirection: boolean };

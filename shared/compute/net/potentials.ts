@@ -12,6 +12,8 @@ type WaterLevels = EntityOf<'waterLevels'>;
 /** A boundary that carries a head of its own: where water enters the section or leaves it. */
 export type Potential = {
   readonly id: string;
+  /** Ids of all the lines of which it is made, its own first. */
+  readonly members: readonly string[];
   readonly line: NetLine;
   readonly role: 'headwater' | 'outlet';
   /** Wetted part in base-raster pixels. */
@@ -99,7 +101,16 @@ function submerged(
       `The face marked as submerged lies wholly above the ${line.value.water}. Check the level and the known points.`,
     );
   }
-  return { id: line.id, line, role, shape, level, outHead: level, label: `the ${line.value.water} boundary` };
+  return {
+    id: line.id,
+    members: [line.id],
+    line,
+    role,
+    shape,
+    level,
+    outHead: level,
+    label: `the ${line.value.water} boundary`,
+  };
 }
 
 function freeOrHeld(
@@ -108,7 +119,14 @@ function freeOrHeld(
   headwater: number | null,
   accuracyPx: number,
 ): Potential | { finding: Finding } {
-  const base = { id: line.id, line, role: 'outlet' as const, shape: line.shape, label: labelOf(line) };
+  const base = {
+    id: line.id,
+    members: [line.id],
+    line,
+    role: 'outlet' as const,
+    shape: line.shape,
+    label: labelOf(line),
+  };
   const held = line.kind === 'drain' ? line.value.head : null;
   if (held !== null) return { ...base, level: held, outHead: held };
   const { low, high, mean } = elevationsAlong(line.shape, map);

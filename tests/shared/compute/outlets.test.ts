@@ -1,0 +1,90 @@
+import { describe, expect, it } from 'vitest';
+import { readNet } from '#shared/compute/read-net.ts';
+import { changed, withAdded, withLines } from '#tests/support/exact-nets/edit-net.ts';
+import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
+import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
+import { freeOutflowNet } from '#tests/support/exact-nets/free-outflow-net.ts';
+
+const [parabola, , pile] = EXACT_NETS as [
+  (typeof EXACT_NETS)[number],
+  (typeof EXACT_NETS)[number],
+  (typeof EXACT_NETS)[number],
+];
+
+describe('a face of free outflow', () => {
+  it('is the outlet, its lowest elevation the head at which the water has left', () => {
+    const reading = readNet(freeOutflowNet([{ at: [5, 3] }]));
+    expect(reading.findings.filter((found) => found.weight !== 'note')).toEqual([]);
+    expect(reading.state).toBe('read');
+    expect(reading.quantities.headLost).toBeCloseTo(10, 2);
+    expect(reading.lines.filter((line) => line.source === 'boundary').map((line) => line.head)).toEqual([
+      10,
+      null,
+    ]);
+  });
+
+  it('has h = z along it', () => {
+    const { points } = readNet(freeOutflowNet([{ at: [10, 3] }, { at: [10, 1.4] }, { at: [9.99, 0.4] }]));
+    expect(points.map((point) => point.status)).toEqual(['read', 'read', 'read']);
+    for (const point of points) expect(Math.abs(point.pressureHead!)).toBeLessThan(0.02);
+  });
+
+  it('keeps heads between the headwater and its own elevations, falling along the flow', () => {
+    const places = [0.5, 2, 4, 6, 8, 9, 9.7].map((x) => ({ at: [x, 0.2] as const }));
+    const heads = readNet(freeOutflowNet(places)).points.map((point) => point.totalHead!);
+    heads.forEach((head, i) => {
+      expect(head).toBeLessThan(i === 0 ? 10 : heads[i - 1]!);
+      expect(head).toBeGreaterThan(0);
+    });
+  });
+
+  it('that is level takes its ground elevation, never a lower tailwater', () => {
+    const net = exactNetDocument(pile.net, { pxPerUnit: pile.pxPerUnit });
+    const dry = withLines(net, 'submergedFace', (value, i) =>
+      i === 1 ? { ...value, line: 'outflowFace', water: null } : value,
+    );
+    // Ground at 99, headwater at 104, a tailwater level of 90 entered for nothing.
+    const reading = readNet(changed(dry, 'waterLevels', (value) => ({ ...value, tailwater: 90 })));
+    expect(reading.state).toBe('read');
+    expect(reading.quantities.headLost).toBeCloseTo(5, 6);
+  });
+});
+
+describe('a drain', () => {
+  it('under pressure carries its head', () => {
+    const net = exactNetDocument(parabola.net, { pxPerUnit: parabola.pxPerUnit });
+    const held = readNet(withLines(net, 'drain', (value) => ({ ...value, head: 103 })));
+    expect(held.quantities.headLost).toBeCloseTo(15, 9);
+    expect(held.state).toBe('read');
+  });
+
+  it('above the headwater is questioned', () => {
+    const net = exactNetDocument(parabola.net, { pxPerUnit: parabola.pxPerUnit });
+    const codes = readNet(withLines(net, 'drain', (value) => ({ ...value, head: 130 }))).findings.map(
+      (found) => found.code,
+    );
+    expect(codes).toContain('outletAboveHeadwater');
+  });
+});
+
+describe('boundaries in pieces', () => {
+  const net = exactNetDocument(pile.net, {
+    pxPerUnit: pile.pxPerUnit,
+    readings: [{ at: pile.net.placeAt(0.5, 2.2), clicked: true }],
+  });
+  const bed = Object.values(net.entities).find(
+    ({ value }) => value.kind === 'line' && value.water === 'headwater',
+  )!;
+
+  it('are one boundary when they carry one head', () => {
+    if (bed.value.kind !== 'line') throw new Error('the bed is a line');
+    const { points } = bed.value;
+    const half = Math.floor(points.length / 2);
+    const first = withLines(net, 'submergedFace', (value) =>
+      value.water === 'headwater' ? { ...value, points: points.slice(0, half + 1) } : value,
+    );
+    const reading = readNet(withAdded(first, { ...bed.value, points: points.slice(half) }));
+    expect(reading.points[0]!.dropsLost).toBeCloseTo(readNet(net).points[0]!.dropsLost!, 9);
+    expect(reading.lines.filter((line) => line.drops === 0)).toHaveLength(2);
+  });
+});
