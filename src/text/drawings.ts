@@ -11,7 +11,8 @@ export function sectionTitle(name: string): string {
 /** "Section B–B, chainage 212". */
 export function sectionLabel(section: Pick<SectionDto, 'name' | 'chainage'>): string {
   const place = /^[0-9+.,\s]+$/.test(section.chainage) ? `chainage ${section.chainage}` : section.chainage;
-  return [sectionTitle(section.name), place].filter(Boolean).join(', ');
+  const saysSo = section.name.toLowerCase().includes(section.chainage.toLowerCase());
+  return [sectionTitle(section.name), saysSo ? '' : place].filter(Boolean).join(', ');
 }
 
 /** "HF-114 rev C", or the file's name until the drawing has a number. */

@@ -57,7 +57,8 @@ export function SheetAndSections({ drawing, sheet, can }: SheetAndSectionsProps)
         </div>
       </Panel>
       <Panel
-        className="self-start max-lg:order-first"
+        // On a phone the sheet comes first while a frame is dragged on it, otherwise the list.
+        className={framing ? 'self-start' : 'self-start max-lg:order-first'}
         title={text.sections}
         action={
           can.includes('section.edit') && !framing ? (

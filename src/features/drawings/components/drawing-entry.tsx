@@ -113,7 +113,7 @@ function SectionRow({ row: { section, net }, drawingId }: { row: Row; drawingId:
           </Link>
         </td>
         <td className={cellClass}>{section.calibrated ? text.toScale : text.needsKnownPoints}</td>
-        <td className={`${cellClass} text-right`}>–</td>
+        <td className={`${cellClass} text-right max-sm:hidden`}>–</td>
         <td className={cellClass} />
       </tr>
     );
@@ -127,7 +127,9 @@ function SectionRow({ row: { section, net }, drawingId }: { row: Row; drawingId:
       <td className={cellClass}>
         {net.name}, {section.calibrated ? netStateText(net) : text.notCalibrated}
       </td>
-      <td className={`${cellClass} text-right whitespace-nowrap`}>
+      <td
+        className={`${cellClass} text-right whitespace-nowrap ${net.drops === null ? 'max-sm:hidden' : ''}`}
+      >
         {net.drops === null ? '–' : text.dropsOf(net.drops)}
       </td>
       <td className={cellClass}>
