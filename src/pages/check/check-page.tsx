@@ -1,10 +1,117 @@
-import { Loading } from '#client/components/loading.tsx';
+import { useQuery, useSuspenseQuery } from '@tanstack/react-query';
+import { useMemo, useState } from 'react';
+import { useParams } from 'react-router-dom';
+import { ButtonLink } from '#client/components/button.tsx';
+import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
+import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
+import { NotesList } from '#client/features/notes/components/notes-list.tsx';
+import { revisionListQuery, revisionQuery } from '#client/features/revisions/api/revision-queries.ts';
+import { DecisionPanel } from '#client/features/revisions/components/decision-panel.tsx';
+import { RecordFacts } from '#client/features/revisions/components/record-facts.tsx';
+import { RevisionHistory } from '#client/features/revisions/components/revision-history.tsx';
+import { paths } from '#client/lib/paths.ts';
+import { useMedia } from '#client/lib/use-media.ts';
+import { commonText } from '#client/text/common.ts';
+import { deskPageText } from '#client/text/desk-page.ts';
+import { checkText as text } from '#client/text/revisions.ts';
+import type { RevisionDto } from '#shared/contract/revisions.ts';
 import { AppFrame } from '../app-frame.tsx';
+import { CheckGrid, type CheckPane } from './check-grid.tsx';
+import { FrozenSchedule } from './frozen-schedule.tsx';
+import { FrozenTitleBlock } from './frozen-title-block.tsx';
+import { useCheckLive } from './use-check-live.ts';
+import { useFrozenNotes } from './use-frozen-notes.ts';
 
+const NARROW = '(max-width: 819.98px)';
+
+/** The reviewer's view of a revision: everything on it is the frozen record, nothing is worked out again. */
 export function CheckPage() {
+  const { revisionId = '' } = useParams();
+  const { data: revision } = useSuspenseQuery(revisionQuery(revisionId));
+  return <Check key={revisionId} revision={revision} />;
+}
+
+function Check({ revision }: { revision: RevisionDto }) {
+  const { payload, sheet, summary } = revision;
+  const narrow = useMedia(NARROW);
+  const [pane, setPane] = useState<CheckPane>('sheet');
+  const store = useFrozenStore(revision);
+  const notes = useFrozenNotes(revision, store);
+  const history = useQuery(revisionListQuery(payload.netId)).data ?? [summary];
+  useCheckLive(revision);
+  const section = deskPageText.sectionAt(payload.section.name, payload.section.chainage);
+  const drawing = deskPageText.drawingRevision(
+    payload.drawing.number || deskPageText.untitledDrawing,
+    payload.drawing.revision,
+  );
   return (
-    <AppFrame trail={[]}>
-      <Loading />
-    </AppFrame>
+    <div className="flex h-dvh flex-col overflow-hidden">
+      <title>{`${text.heading(summary.label)}, ${section} – ${commonText.product}`}</title>
+      <AppFrame
+        trail={[
+          { label: payload.dam.name, to: paths.dam(payload.dam.id) },
+          { label: drawing, to: paths.drawing(payload.drawing.id, payload.sheet.pageNumber) },
+          { label: `${section}, ${payload.netName}`, to: paths.net(payload.netId) },
+          { label: text.crumb(summary.label) },
+        ]}
+        end={<ButtonLink to={paths.net(payload.netId)}>{text.openNet}</ButtonLink>}
+      >
+        <CheckGrid
+          narrow={narrow}
+          pane={pane}
+          onPane={setPane}
+          sheet={
+            <SheetView
+              store={store}
+              sheet={sheet}
+              frame={null}
+              notes={notes.balloons}
+              label={deskPageText.sheetLabel(section, drawing)}
+              className="min-h-0 flex-1"
+            />
+          }
+          schedule={<FrozenSchedule payload={payload} store={store} />}
+          notes={
+            <NotesList
+              netId={payload.netId}
+              notes={notes.notes}
+              targetOf={notes.targetOf}
+              canWrite={revision.can.includes('note.write')}
+              chosenId={notes.chosenId}
+              onChoose={(note) => {
+                notes.choose(note);
+                setPane('sheet');
+              }}
+              writingAt={notes.writingAt}
+              onWritten={(note) => {
+                notes.setWritingAt(null);
+                if (note) notes.setChosenId(note.id);
+              }}
+            />
+          }
+          block={<FrozenTitleBlock revision={revision} />}
+          check={
+            <>
+              <DecisionPanel revision={revision} />
+              <RecordFacts revision={revision} />
+              <section aria-labelledby="history" className="border-t border-rule px-3 py-2">
+                <h2 id="history" className="m-0 text-base font-bold">
+                  {text.historyTitle}
+                </h2>
+                <RevisionHistory revisions={history} presentId={summary.id} />
+              </section>
+            </>
+          }
+        />
+      </AppFrame>
+    </div>
+  );
+}
+
+/** A desk that only shows: the frozen document with the frozen reading. */
+function useFrozenStore({ payload }: RevisionDto) {
+  return useMemo(
+    () => createDeskStore({ document: payload.document }, { reading: payload.reading, readOnly: true }),
+    [payload],
   );
 }

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { classNames } from '#client/components/class-names.ts';
 import { deskPageText as text } from '#client/text/desk-page.ts';
+import { PaneSwitch } from './pane-switch.tsx';
 
 export type DeskPane = 'sheet' | 'schedule' | 'notes' | 'block';
 const PANES: readonly DeskPane[] = ['sheet', 'schedule', 'notes', 'block'];
@@ -62,22 +63,7 @@ function NarrowGrid({ tools, lines, sheet, schedule, notes, block, pane, onPane 
         <div className={classNames(place('notes'), 'bg-film')}>{notes}</div>
         <div className={classNames(place('block'), 'overflow-y-auto bg-film')}>{block}</div>
       </div>
-      <nav aria-label={text.panesLabel} className="grid shrink-0 grid-cols-4 border-t border-ink bg-film">
-        {PANES.map((each) => (
-          <button
-            key={each}
-            type="button"
-            aria-pressed={each === pane}
-            className={classNames(
-              'min-h-[44px] border-t-[3px] px-1 text-sm',
-              each === pane ? 'border-equipotential bg-chosen font-semibold' : 'border-transparent',
-            )}
-            onClick={() => onPane(each)}
-          >
-            {text.panes[each]}
-          </button>
-        ))}
-      </nav>
+      <PaneSwitch panes={PANES} names={text.panes} pane={pane} onPane={onPane} />
     </main>
   );
 }

@@ -1,0 +1,51 @@
+import { useStore } from 'zustand';
+import { buttonClass } from '#client/components/button.tsx';
+import { Schedule } from '#client/features/desk/components/schedule.tsx';
+import { ScheduleState } from '#client/features/desk/components/schedule-pane.tsx';
+import { scheduleLead } from '#client/features/desk/components/schedule-rows.ts';
+import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
+import { downloadText } from '#client/lib/download.ts';
+import { checkText } from '#client/text/revisions.ts';
+import { scheduleText as text } from '#client/text/schedule.ts';
+import type { RevisionPayload } from '#shared/contract/revisions.ts';
+import { scheduleCsv } from '#shared/text/schedule-csv.ts';
+
+/** The schedule as it was frozen: shown, sorted and kept as CSV, never worked out again. */
+export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; store: DeskStore }) {
+  const { document, reading } = payload;
+  const selection = useStore(store, (state) => state.selection);
+  const download = () => {
+    const name = `${payload.drawing.number || 'net'}-${payload.label}-schedule.csv`;
+    downloadText(scheduleCsv(document, reading), name, 'text/csv;charset=utf-8');
+  };
+  return (
+    <section aria-label={text.title} className="h-full overflow-auto bg-film">
+      <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
+        <h2 className="m-0 text-base font-bold">{text.title}</h2>
+        <span className="text-ink-2">
+          {scheduleLead(document, reading)}, {text.provisional}
+        </span>
+        <button
+          type="button"
+          className={buttonClass('quiet', 'ml-auto px-2 py-[2px] text-sm')}
+          onClick={download}
+        >
+          {checkText.downloadCsv}
+        </button>
+      </div>
+      <ScheduleState reading={reading} failed={false} />
+      {reading.points.length === 0 ? (
+        <p className="m-0 px-2.5 py-1 text-ink-2">{text.emptyReadOnly}</p>
+      ) : (
+        <Schedule
+          document={document}
+          reading={reading}
+          onEdit={null}
+          selectedIds={selection.kind === 'readingPoint' ? selection.ids : []}
+          onSelect={(id) => store.select({ kind: 'readingPoint', ids: [id] })}
+        />
+      )}
+      <p className="sticky left-0 m-0 px-2.5 py-2 text-sm text-ink-2">{text.caution}</p>
+    </section>
+  );
+}
