@@ -1,8 +1,8 @@
 import type { EntityManager } from 'typeorm';
 import { RevisionEntity } from '#server/entities/ledger-entity.ts';
 import type { DamScope } from '#server/http/route-record.ts';
-import { damActionsFor } from '#server/policies/dam-policy.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
+import { netActionsFor } from './net-actions.ts';
 import { readDocument } from './net-document.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { placeOfNet } from './net-place.ts';
@@ -30,6 +30,6 @@ export async function netDetail(
     drawnBy: await drawersOfNet(manager, netId),
     updatedAt: net.updatedAt.toISOString(),
     revisionCount: await manager.countBy(RevisionEntity, { netId }),
-    can: damActionsFor(scope),
+    can: netActionsFor(place, scope),
   };
 }

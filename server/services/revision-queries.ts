@@ -2,10 +2,11 @@ import type { EntityManager } from 'typeorm';
 import { DecisionEntity, RevisionEntity } from '#server/entities/ledger-entity.ts';
 import { notFound } from '#server/errors/app-error.ts';
 import type { Actor, DamScope } from '#server/http/route-record.ts';
-import { allowsOnDam, damActionsFor } from '#server/policies/dam-policy.ts';
+import { allowsOnDam } from '#server/policies/dam-policy.ts';
 import { decisionRefusal } from '#server/policies/revision-policy.ts';
 import type { RevisionDto, RevisionSummary } from '#shared/contract/revisions.ts';
-import { placeOfNet } from './net-place.ts';
+import { netActionsFor } from './net-actions.ts';
+import { placeOfNet, putAwayRefusal } from './net-place.ts';
 import { notesOfNet } from './note-queries.ts';
 import { openPayload } from './revision-payload.ts';
 import { presentSheet } from './sheet-presenter.ts';
@@ -97,16 +98,16 @@ export async function revisionDetail(
   scope: DamScope,
 ): Promise<RevisionDto> {
   const { row, payload } = await openRevision(manager, revisionId);
-  const { sheet } = await placeOfNet(manager, row.netId);
+  const place = await placeOfNet(manager, row.netId);
   return {
     summary: await revisionSummaryOf(manager, revisionId),
     payload,
-    sheet: presentSheet(sheet),
+    sheet: presentSheet(place.sheet),
     notes: await notesOfNet(manager, row.netId),
-    can: damActionsFor(scope),
-    decideRefusal: allowsOnDam('revision.decide', scope)
-      ? ((await decisionRefusalFor(manager, row, actor.id))?.text ?? null)
-      : 'Only a reviewer of this dam decides on a revision.',
+    can: netActionsFor(place, scope),
+    decideRefusal: !allowsOnDam('revision.decide', scope)
+      ? 'Only a reviewer of this dam decides on a revision.'
+      : ((await decisionRefusalFor(manager, row, actor.id))?.text ?? putAwayRefusal(place)?.detail ?? null),
   };
 }
 

@@ -13,7 +13,7 @@ import { revisionFacts } from './checking-letters.ts';
 import { writeEvent } from './event-writer.ts';
 import { queueMail } from './mail-service.ts';
 import { lockNet } from './net-locks.ts';
-import { sectionTitle } from './net-place.ts';
+import { placeOfNet, refusePutAway, sectionTitle } from './net-place.ts';
 import { personState } from './person-state.ts';
 import { decisionRefusalFor, openRevision } from './revision-queries.ts';
 import type { ServiceDeps } from './service-deps.ts';
@@ -31,6 +31,7 @@ export function createRevisionService(deps: RevisionServiceDeps) {
     const { row, payload } = await openRevision(manager, revisionId);
     const refusal = await decisionRefusalFor(manager, row, actor.id);
     if (refusal) throw refused(refusal);
+    refusePutAway(await placeOfNet(manager, row.netId));
     if (input.decision === 'returned' && input.note === '')
       throw invalidInput([
         { path: 'note', message: 'Say what has to be changed; a revision is returned with a note.' },

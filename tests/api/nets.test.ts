@@ -1,7 +1,7 @@
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { type EntityKind, type entitiesOf, singleOf } from '#shared/contract/document.ts';
-import { addNet, addSheet, openNet } from '#tests/support/net-fixture.ts';
+import { addNet, addSheet, batchesOf, lineOf, openNet, put } from '#tests/support/net-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
@@ -129,6 +129,51 @@ describe('a net', () => {
     const first = await caller.post(`/nets/${netId}/archive`).expect(200);
     const second = await caller.post(`/nets/${netId}/archive`).expect(200);
     expect(second.body.archivedAt).toBe(first.body.archivedAt);
+  });
+
+  it('allows nobody to trace while it, its section, its drawing or its dam is put away', async () => {
+    const { caller, netId, sectionId, damId, sheetId } = await addNet(app);
+    const mayTrace = async () => (await openNet(caller, netId)).can.includes('net.trace');
+    const drawing = '(SELECT drawing_id FROM sheet WHERE id = $2)';
+    expect(await mayTrace()).toBe(true);
+    for (const [table, id] of [
+      ['net', netId],
+      ['section', sectionId],
+      ['dam', damId],
+    ]) {
+      await app.db.query(`UPDATE ${table} SET archived_at = now() WHERE id = $1`, [id]);
+      expect(await mayTrace(), table).toBe(false);
+      await app.db.query(`UPDATE ${table} SET archived_at = NULL WHERE id = $1`, [id]);
+    }
+    await app.db.query(`UPDATE drawing SET archived_at = $1 WHERE id = ${drawing}`, [new Date(), sheetId]);
+    expect(await mayTrace()).toBe(false);
+    expect((await openNet(caller, netId)).can).toContain('net.archive');
+  });
+
+  it('is drawn by whoever set its section out, through whichever of its nets', async () => {
+    const { caller, netId, sectionId, damId, engineer } = await addNet(app);
+    const surveyor = await app.signIn('Sana Verma');
+    await addMember(app.db, damId, surveyor.person.id, 'engineer');
+    const otherId = uuidv7();
+    await caller.post(`/sections/${sectionId}/nets`, { id: otherId, name: 'Flood' }).expect(201);
+    const knownPoint = {
+      kind: 'knownPoint' as const,
+      name: 'K1',
+      at: [5, 5] as [number, number],
+      offset: 0,
+      elevation: 98,
+      use: 'fit' as const,
+    };
+    const id = uuidv7();
+    await surveyor.caller.post(`/nets/${otherId}/commands`, batchesOf()([put(knownPoint, id)])).expect(200);
+    // Somebody else moves it afterwards, so that only the commands still name her.
+    await caller.post(`/nets/${netId}/commands`, batchesOf()([put(knownPoint, id, 1)])).expect(200);
+    const line = lineOf([[1, 1]], { finished: false });
+    const bystander = await app.signIn('Jon Tracer');
+    await addMember(app.db, damId, bystander.person.id, 'engineer');
+    await bystander.caller.post(`/nets/${otherId}/commands`, batchesOf()([put(line)])).expect(200);
+    const { drawnBy } = await openNet(caller, netId);
+    expect(drawnBy.map((person) => person.id).sort()).toEqual([engineer.id, surveyor.person.id].sort());
   });
 
   it('cannot be read by somebody outside the dam', async () => {

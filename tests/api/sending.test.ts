@@ -306,6 +306,18 @@ describe('deciding', () => {
     expect(late.body.detail).toMatch(/Revision B of this net was sent since/);
   });
 
+  it('waits while the net is put away', async () => {
+    const { revisionId, reviewer, netId, caller } = await sent();
+    await caller.post(`/nets/${netId}/archive`).expect(200);
+    const accept = { decision: 'accepted', note: '' };
+    await reviewer.caller.post(`/revisions/${revisionId}/decision`, accept).expect(409);
+    const { body } = await reviewer.caller.get(`/revisions/${revisionId}`).expect(200);
+    expect(body.decideRefusal).toMatch(/put away/);
+    expect(body.can).not.toContain('revision.decide');
+    await caller.post(`/nets/${netId}/restore`).expect(200);
+    await reviewer.caller.post(`/revisions/${revisionId}/decision`, accept).expect(201);
+  });
+
   it('is not for somebody who is a reviewer of the dam no longer', async () => {
     const { revisionId, reviewer, damId } = await sent();
     await app.db.query('UPDATE membership SET roles = $1 WHERE dam_id = $2 AND person_id = $3', [
