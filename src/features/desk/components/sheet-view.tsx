@@ -7,7 +7,7 @@ import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import type { ToolId } from '../model/tool-choice.ts';
 import { createViewStore } from '../model/view-store.ts';
-import type { SheetFrame } from '../model/viewport.ts';
+import { type SheetFrame, toScreen, type Viewport } from '../model/viewport.ts';
 import type { NoteBalloon } from '../render/build-scene.ts';
 import { DraftActions } from './draft-actions.tsx';
 import { Magnifier } from './magnifier.tsx';
@@ -91,12 +91,21 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       </div>
       <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
         <DraftActions store={store} onAction={(action) => controller?.act(action)} />
-        <div className="ml-auto">
+        <div className={isUnderMagnifier(follow, views.getState().view) ? 'order-first' : 'ml-auto'}>
           {controller && <Magnifier store={store} renderer={controller.renderer} follow={follow} />}
         </div>
       </div>
     </div>
   );
+}
+
+const MAGNIFIER_CORNER_PX = 210;
+
+/** True when the pointer is about to go under the magnified view, which then moves to the other side. */
+function isUnderMagnifier(at: SheetPx | null, view: Viewport): boolean {
+  if (at === null) return false;
+  const [x, y] = toScreen(view, at);
+  return x > view.widthPx - MAGNIFIER_CORNER_PX && y > view.heightPx - MAGNIFIER_CORNER_PX;
 }
 
 function cursorFor(tool: ToolId): string {

@@ -147,10 +147,10 @@ const cross: Painter = (context, mark) => {
 };
 
 const doubt: Painter = (context, mark) => {
-  circle(context, 11);
-  haloStroke(context, mark, 1.8);
-  context.font = `700 12px ${FONT}`;
-  haloText(context, '?', 0, -18, mark.colour);
+  circle(context, 8);
+  haloStroke(context, mark, 1.5);
+  context.font = `700 11px ${FONT}`;
+  haloText(context, '?', 0, -14, mark.colour);
 };
 
 export const MARK_PAINTERS: Record<MarkShape, Painter> = {

@@ -1,0 +1,60 @@
+import { describe, expect, it } from 'vitest';
+import { createReadingClient, type WorkerLike } from '#client/features/desk/model/reading-client.ts';
+import type { ReadingAnswer } from '#client/features/desk/model/reading-worker.ts';
+import { readNet } from '#shared/compute/read-net.ts';
+import { documentWith } from '#tests/support/desk/desk-fixture.ts';
+
+/** A worker that reads when the test lets it, with the real reading inside. */
+function heldWorker() {
+  const questions: number[] = [];
+  let answers: Array<() => void> = [];
+  const worker: WorkerLike = {
+    onmessage: null,
+    onerror: null,
+    terminate: () => undefined,
+    postMessage({ revision, document }) {
+      questions.push(revision);
+      const data: ReadingAnswer = { revision, reading: readNet(document) };
+      answers.push(() => worker.onmessage?.({ data } as MessageEvent<ReadingAnswer>));
+    },
+  };
+  const answerAll = () => {
+    const due = answers;
+    answers = [];
+    for (const answer of due) answer();
+  };
+  return { worker, questions, answerAll };
+}
+
+describe('reading in a worker', () => {
+  it('puts one question at a time and of the later ones only the newest', () => {
+    const { worker, questions, answerAll } = heldWorker();
+    const client = createReadingClient(() => worker);
+    const answered: number[] = [];
+    client.onAnswer((revision, reading) => answered.push(reading === null ? -1 : revision));
+    for (const revision of [1, 2, 3, 4]) client.ask(documentWith({}), revision);
+    expect(questions).toEqual([1]);
+    answerAll();
+    answerAll();
+    expect(questions).toEqual([1, 4]);
+    expect(answered).toEqual([1, 4]);
+  });
+
+  it('says that a reading failed and asks a fresh worker the next time', () => {
+    const workers: ReturnType<typeof heldWorker>[] = [];
+    const client = createReadingClient(() => {
+      workers.push(heldWorker());
+      return workers.at(-1)!.worker;
+    });
+    const answered: Array<[number, boolean]> = [];
+    client.onAnswer((revision, reading) => answered.push([revision, reading !== null]));
+    client.ask(documentWith({}), 1);
+    workers[0]!.worker.onerror?.({} as ErrorEvent);
+    client.ask(documentWith({}), 2);
+    workers[1]!.answerAll();
+    expect(answered).toEqual([
+      [1, false],
+      [2, true],
+    ]);
+  });
+});

@@ -1,0 +1,164 @@
+import { describe, expect, it } from 'vitest';
+import { buildScene, type SceneInput } from '#client/features/desk/render/build-scene.ts';
+import { LABEL_HEIGHT_PX, labelWidthPx, placeLabels } from '#client/features/desk/render/label-layout.ts';
+import { diffScene, type SceneItem, type SceneSink } from '#client/features/desk/render/scene.ts';
+import { documentWith, LINE_A, LINE_B, POINT_A, tracedLine } from '#tests/support/desk/desk-fixture.ts';
+
+const line = tracedLine([
+  [100, 100],
+  [120, 400],
+]);
+
+function inputOf(changes: Partial<SceneInput> = {}): SceneInput {
+  return {
+    document: documentWith({
+      [LINE_A]: line,
+      [LINE_B]: tracedLine([
+        [200, 100],
+        [210, 420],
+      ]),
+    }),
+    preview: {},
+    reading: null,
+    selection: { kind: 'none', ids: [], vertex: null },
+    draftId: null,
+    hiddenKinds: [],
+    notes: [],
+    map: null,
+    readOnly: false,
+    zoom: 1,
+    ...changes,
+  };
+}
+
+/** Keeps the list a sink would paint and counts what it was told. */
+function recordingSink() {
+  const painted: SceneItem[] = [];
+  const told: string[] = [];
+  const sink: SceneSink = {
+    add(item, index) {
+      told.push(`add ${item.id}`);
+      painted.splice(index, 0, item);
+    },
+    change(item) {
+      told.push(`change ${item.id}`);
+      painted[painted.findIndex((old) => old.id === item.id)] = item;
+    },
+    remove(id) {
+      told.push(`remove ${id}`);
+      painted.splice(
+        painted.findIndex((old) => old.id === id),
+        1,
+      );
+    },
+  };
+  return { painted, told, sink };
+}
+
+describe('the scene', () => {
+  it('shows the dragged line where it is dragged to, and handles only on the chosen line', () => {
+    const moved = {
+      ...line,
+      points: [
+        [100, 100],
+        [150, 450],
+      ] as [number, number][],
+    };
+    const items = buildScene(
+      inputOf({ preview: { [LINE_A]: moved }, selection: { kind: 'line', ids: [LINE_A], vertex: 1 } }),
+    );
+    expect(items.find((item) => item.id === LINE_A)).toMatchObject({ points: moved.points, strong: true });
+    expect(items.filter((item) => item.id.startsWith('vertex')).map((item) => item.shape)).toEqual([
+      'handle',
+      'chosenHandle',
+    ]);
+  });
+
+  it('shows no handles to those who may only look, and nothing that is hidden', () => {
+    const chosen = { kind: 'line', ids: [LINE_A], vertex: null } as const;
+    expect(buildScene(inputOf({ selection: chosen, readOnly: true })).map((item) => item.shape)).toEqual([
+      'line',
+      'line',
+    ]);
+    expect(buildScene(inputOf({ hiddenKinds: ['equipotential'] }))).toEqual([]);
+  });
+
+  it('leaves out a point typed in section coordinates until the section is set out', () => {
+    const document = documentWith({
+      [POINT_A]: {
+        kind: 'readingPoint',
+        name: 'P1',
+        place: { on: 'section', offset: 1, elevation: 2 },
+        order: 1,
+      },
+    });
+    expect(buildScene(inputOf({ document }))).toEqual([]);
+  });
+
+  it('tells the sink only what differs', () => {
+    const before = buildScene(inputOf());
+    const after = buildScene(
+      inputOf({ selection: { kind: 'line', ids: [LINE_B], vertex: null }, readOnly: true }),
+    );
+    const { told, sink, painted } = recordingSink();
+    diffScene([], before, sink);
+    told.length = 0;
+    diffScene(before, buildScene(inputOf({ document: inputOf().document })), sink);
+    expect(told.filter((entry) => !entry.startsWith('change'))).toEqual([]);
+    told.length = 0;
+    diffScene(before, after, sink);
+    expect(told).toEqual([`change ${LINE_B}`]);
+    expect(painted.map((item) => item.id)).toEqual([LINE_A, LINE_B]);
+  });
+
+  it('arrives at the next scene from any other, in its order', () => {
+    const mark = (id: string): SceneItem => ({
+      id,
+      shape: 'cross',
+      at: [0, 0],
+      text: '',
+      colour: '',
+      strong: false,
+      offsetPx: [0, 0],
+    });
+    const orders = ['', 'a', 'abc', 'cab', 'bxa', 'cxbya', 'yx', 'abcxy'];
+    for (const from of orders) {
+      for (const to of orders) {
+        const { painted, sink } = recordingSink();
+        diffScene([], [...from].map(mark), sink);
+        diffScene([...from].map(mark), [...to].map(mark), sink);
+        expect(painted.map((item) => item.id).join('')).toBe(to);
+      }
+    }
+  });
+});
+
+describe('labels at line ends', () => {
+  it('stand below their ends and cover no other label', () => {
+    const labels = Array.from({ length: 9 }, (_unused, i) => ({
+      id: `${i}`,
+      x: 500 + 18 * i,
+      y: 400,
+      text: '112.00',
+    }));
+    const offsets = placeLabels(labels);
+    const boxes = labels.map(({ id, x, y }) => {
+      const [dx, dy] = offsets.get(id)!;
+      return { x: x + dx, y: y + dy };
+    });
+    expect(offsets.get('0')).toEqual([0, 16]);
+    for (let i = 0; i < boxes.length; i += 1) {
+      for (let j = 0; j < i; j += 1) {
+        const apart =
+          Math.abs(boxes[i]!.x - boxes[j]!.x) >= labelWidthPx('112.00') ||
+          Math.abs(boxes[i]!.y - boxes[j]!.y) >= LABEL_HEIGHT_PX;
+        expect(apart).toBe(true);
+      }
+    }
+  });
+
+  it('stand in the same places whatever order the lines were drawn in', () => {
+    const labels = [3, 1, 2].map((i) => ({ id: `${i}`, x: 100 + i * 10, y: 0, text: '110' }));
+    expect(placeLabels(labels)).toEqual(placeLabels([...labels].reverse()));
+  });
+});
