@@ -200,7 +200,7 @@ describe('inside the client', () => {
   });
 
   it("the desk's model and tools know neither React nor fabric", () => {
-    const faults = [...from('src/features/canvas/model/'), ...from('src/features/canvas/tools/')].filter(
+    const faults = [...from('src/features/desk/model/'), ...from('src/features/desk/tools/')].filter(
       (each) => ['react', 'react-dom', 'fabric'].includes(packageOf(each.to)),
     );
     expect(faults.map(says)).toEqual([]);
@@ -208,7 +208,7 @@ describe('inside the client', () => {
 
   it('fabric is imported in one place', () => {
     const faults = from('src/').filter(
-      (each) => packageOf(each.to) === 'fabric' && !each.from.startsWith('src/features/canvas/render/'),
+      (each) => packageOf(each.to) === 'fabric' && !each.from.startsWith('src/features/desk/render/'),
     );
     expect(faults.map(says)).toEqual([]);
   });
