@@ -11,12 +11,14 @@ import { revisionRoutes } from './revision-routes.ts';
 import { scheduleRoutes } from './schedule-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
 import { sessionRoutes } from './session-routes.ts';
+import { waitingRoutes } from './waiting-routes.ts';
 
 /** Every route of the API. A record cannot be made without an access rule. */
 export const routes: readonly RouteRecord[] = [
   ...sessionRoutes,
   ...peopleRoutes,
   ...damRoutes,
+  ...waitingRoutes,
   ...liveRoutes,
   ...mailRoutes,
   ...drawingRoutes,

@@ -1,0 +1,176 @@
+import type { EntityManager } from 'typeorm';
+import type { WaitingDto } from '#shared/contract/dams.ts';
+import { drawingTitle } from './drawing-title.ts';
+import { placeOfNet, sectionTitle } from './net-place.ts';
+import { readingOf } from './schedule-queries.ts';
+
+export type WaitingItem = WaitingDto['items'][number];
+
+/** Unfinished nets and bare drawings shown at most, newest first: a list of hundreds would say nothing. */
+const MOST_OF_A_KIND = 20;
+
+interface NetRow {
+  dam_id: string;
+  dam_name: string;
+  drawing_id: string;
+  number: string;
+  title: string;
+  file_name: string;
+  section_name: string;
+  net_id: string;
+  net_name: string;
+  at: Date;
+}
+interface RevisionRow extends NetRow {
+  revision_id: string;
+  label: string;
+  person_name: string;
+}
+interface NotesRow extends NetRow {
+  to_answer: number;
+  answered: number;
+}
+
+/** Nets in use on the reader's dams, with the newest revision of each. $1 = reader. */
+const NETS = `
+  FROM membership m JOIN dam d ON d.id = m.dam_id AND d.archived_at IS NULL
+  JOIN drawing w ON w.dam_id = d.id AND w.archived_at IS NULL
+  JOIN sheet s ON s.drawing_id = w.id
+  JOIN section c ON c.sheet_id = s.id AND c.archived_at IS NULL
+  JOIN net n ON n.section_id = c.id AND n.archived_at IS NULL
+  LEFT JOIN LATERAL (SELECT v.* FROM revision v WHERE v.net_id = n.id ORDER BY v.number DESC LIMIT 1) r ON true`;
+const NET_COLUMNS = `d.id AS dam_id, d.name AS dam_name, w.id AS drawing_id, w.number, w.title, w.file_name,
+  c.name AS section_name, n.id AS net_id, n.name AS net_name`;
+/** The reader started the net or changed it. */
+const DREW = `(n.created_by = $1 OR EXISTS (SELECT 1 FROM command_batch b WHERE b.net_id = n.id AND b.person_id = $1))`;
+
+const titleOf = (row: NetRow) => `${sectionTitle({ name: row.section_name })}, ${row.net_name}`;
+
+function itemOf(
+  kind: WaitingItem['kind'],
+  row: NetRow,
+  words: { text: string; detail?: string; revisionId?: string },
+): WaitingItem {
+  const drawing = drawingTitle({ number: row.number, title: row.title, fileName: row.file_name });
+  return {
+    kind,
+    text: words.text,
+    detail: [drawing, words.detail].filter(Boolean).join(', '),
+    damId: row.dam_id,
+    damName: row.dam_name,
+    drawingId: row.drawing_id,
+    netId: row.net_id,
+    revisionId: words.revisionId ?? null,
+    at: row.at.toISOString(),
+  };
+}
+
+async function toCheck(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const rows: RevisionRow[] = await manager.query(
+    `SELECT ${NET_COLUMNS}, r.id AS revision_id, r.label, r.sent_at AS at, p.name AS person_name
+      ${NETS} JOIN person p ON p.id = r.sent_by
+      WHERE m.person_id = $1 AND 'reviewer' = ANY (m.roles) AND r.reviewer_id = $1
+        AND NOT EXISTS (SELECT 1 FROM decision e WHERE e.revision_id = r.id)`,
+    [personId],
+  );
+  return rows.map((row) =>
+    itemOf('check', row, {
+      text: `Check revision ${row.label} of ${titleOf(row)}`,
+      detail: `sent by ${row.person_name}`,
+      revisionId: row.revision_id,
+    }),
+  );
+}
+
+async function toRevise(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const rows: RevisionRow[] = await manager.query(
+    `SELECT ${NET_COLUMNS}, r.id AS revision_id, r.label, e.decided_at AS at, p.name AS person_name
+      ${NETS} JOIN decision e ON e.revision_id = r.id AND e.decision = 'returned' JOIN person p ON p.id = e.decided_by
+      WHERE m.person_id = $1 AND 'engineer' = ANY (m.roles) AND r.sent_by = $1`,
+    [personId],
+  );
+  return rows.map((row) =>
+    itemOf('returned', row, {
+      text: `Revise ${titleOf(row)}`,
+      detail: `revision ${row.label} was returned by ${row.person_name}`,
+      revisionId: row.revision_id,
+    }),
+  );
+}
+
+/** Notes of others on what the reader drew, and the reader's own that somebody answered; one item for each net. */
+async function toAnswer(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const rows: NotesRow[] = await manager.query(
+    `SELECT ${NET_COLUMNS}, o.at, o.to_answer, o.answered
+      ${NETS} JOIN LATERAL (
+        SELECT max(t.created_at) AS at,
+          count(*) FILTER (WHERE t.state = 'open')::int AS to_answer,
+          count(*) FILTER (WHERE t.state = 'answered')::int AS answered
+        FROM note t WHERE t.net_id = n.id
+          AND ((t.state = 'open' AND t.created_by <> $1 AND ${DREW}) OR (t.state = 'answered' AND t.created_by = $1))
+      ) o ON o.at IS NOT NULL
+      WHERE m.person_id = $1`,
+    [personId],
+  );
+  return rows.map((row) => itemOf('answer', row, { text: notesText(row), detail: row.net_name }));
+}
+
+function notesText({ to_answer: open, answered, section_name: name }: NotesRow): string {
+  const on = sectionTitle({ name });
+  if (open > 0) return `Answer ${open === 1 ? 'a note' : `${open} notes`} on ${on}`;
+  return `Read the answer to ${answered === 1 ? 'your note' : `${answered} notes of yours`} on ${on}`;
+}
+
+/** What the reader draws and has not sent yet, as far as its schedule gives no figures. */
+async function toFinish(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const rows: NetRow[] = await manager.query(
+    `SELECT ${NET_COLUMNS}, n.updated_at AS at ${NETS}
+      WHERE m.person_id = $1 AND 'engineer' = ANY (m.roles) AND r.id IS NULL AND ${DREW}
+      ORDER BY n.updated_at DESC LIMIT ${MOST_OF_A_KIND}`,
+    [personId],
+  );
+  const items: WaitingItem[] = [];
+  for (const row of rows) {
+    const reading = await readingOf(manager, await placeOfNet(manager, row.net_id));
+    if (reading.setOut.state !== 'fitted')
+      items.push(itemOf('calibrate', row, { text: `Put ${titleOf(row)} to scale` }));
+    else if (reading.state === 'unfinished')
+      items.push(itemOf('trace', row, { text: `Finish ${titleOf(row)}` }));
+  }
+  return items;
+}
+
+/** Drawings the reader uploaded that nobody has begun to work on. */
+async function toBegin(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const rows: Array<Omit<NetRow, 'net_id' | 'net_name' | 'section_name'>> = await manager.query(
+    `SELECT d.id AS dam_id, d.name AS dam_name, w.id AS drawing_id, w.number, w.title, w.file_name,
+        w.uploaded_at AS at
+      FROM membership m JOIN dam d ON d.id = m.dam_id AND d.archived_at IS NULL
+      JOIN drawing w ON w.dam_id = d.id AND w.archived_at IS NULL AND w.uploaded_by = $1
+      JOIN render_job j ON j.drawing_id = w.id AND j.state = 'done'
+      WHERE m.person_id = $1 AND 'engineer' = ANY (m.roles) AND NOT EXISTS (
+        SELECT 1 FROM sheet s JOIN section c ON c.sheet_id = s.id JOIN net n ON n.section_id = c.id
+        WHERE s.drawing_id = w.id)
+      ORDER BY w.uploaded_at DESC LIMIT ${MOST_OF_A_KIND}`,
+    [personId],
+  );
+  return rows.map((row) => ({
+    kind: 'calibrate',
+    text: `Put ${drawingTitle({ number: row.number, title: row.title, fileName: row.file_name })} to scale`,
+    detail: row.number && row.title ? row.title : '',
+    damId: row.dam_id,
+    damName: row.dam_name,
+    drawingId: row.drawing_id,
+    netId: null,
+    revisionId: null,
+    at: row.at.toISOString(),
+  }));
+}
+
+/** What waits for a person over all their dams, newest first. */
+export async function waitingFor(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const kinds = [toCheck, toRevise, toAnswer, toFinish, toBegin];
+  const items: WaitingItem[] = [];
+  for (const read of kinds) items.push(...(await read(manager, personId)));
+  return items.sort((a, b) => (a.at < b.at ? 1 : -1));
+}
