@@ -2,7 +2,7 @@ import type { RevisionFacts } from '#server/mail/templates/checking-mails.ts';
 import type { Figures } from '#server/mail/templates/letter.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 import type { RevisionPayload } from '#shared/contract/revisions.ts';
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import { sectionTitle } from './net-place.ts';
 
@@ -34,7 +34,7 @@ export function scheduleFigures({ document, reading }: RevisionPayload): Figures
       point.name || 'unnamed',
       fixedText(point.elevation, decimals.elevation),
       fixedText(point.dropsLost, decimals.drops),
-      fixedText(point.totalHead, decimals.head),
+      plusMinusText(point.totalHead, point.totalHeadPlusMinus, decimals.head),
       pressureText(point, decimals.pressure),
     ]);
   const more = reading.points.length - rows.length;
@@ -44,15 +44,16 @@ export function scheduleFigures({ document, reading }: RevisionPayload): Figures
       'Point',
       `Elevation, ${elevation}`,
       'Drops lost',
-      `Total head, ${elevation}`,
-      `Pore pressure, ${unitNames(unitSystem).pressure}`,
+      `Total head, ${elevation}, ± provisional`,
+      `Pore pressure, ${unitNames(unitSystem).pressure}, ± provisional`,
     ],
     rows: more > 0 ? [...rows, [`and ${more} more`, '', '', '', '']] : rows,
   };
 }
 
-function pressureText({ status, porePressure }: PointReading, decimals: number): string {
+function pressureText(point: PointReading, decimals: number): string {
+  const { status, porePressure, porePressurePlusMinus } = point;
   if (status === 'withheld') return 'not read';
-  const text = fixedText(porePressure, decimals);
-  return status === 'abovePhreatic' ? `${text}, above the phreatic line` : text;
+  if (status === 'abovePhreatic') return `${fixedText(porePressure, decimals)}, above the phreatic line`;
+  return plusMinusText(porePressure, porePressurePlusMinus, decimals);
 }

@@ -128,7 +128,10 @@ describe('sending for checking', () => {
       'For checking: Harrow Fen Dam, HF-114 rev C, Section B–B, chainage 212, revision A',
     );
     expect(mail?.text).toContain(`http://tracehead.test/revisions/${input.id}`);
-    expect(mail?.text).toMatch(/^P1 +\d/m);
+    const [p1] = opened.payload.reading.points;
+    expect(mail?.text).toMatch(/Total head, m local datum LD, ± provisional/);
+    const pressure = `${p1.porePressure.toFixed(1)} ± ${p1.porePressurePlusMinus.toFixed(1)}`;
+    expect(mail?.text.split('\n').find((line) => line.startsWith('P1 '))).toContain(pressure);
     expect(app.jobs.queued).toContainEqual({ name: 'send-mail', rowId: mail?.id, afterSeconds: 0 });
     const summary = (await openNet(caller, netId)).net;
     expect(summary).toMatchObject({ state: 'sent', revisionLabel: 'A', changedSinceRevision: false });
@@ -201,6 +204,21 @@ describe('sending for checking', () => {
       .post(`/nets/${netId}/revisions`, await sendInputFor(place, second.person.id))
       .expect(201);
     expect(again.body.label).toBe('B');
+  });
+
+  it('leaves nothing behind when its mail cannot be queued', async () => {
+    const place = await readyToSend();
+    const input = await sendInputFor(place, place.reviewer.person.id);
+    const { enqueue } = app.jobs;
+    app.jobs.enqueue = async () => {
+      throw new Error('The queue is away.');
+    };
+    await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(500);
+    app.jobs.enqueue = enqueue;
+    const { body } = await place.caller.get(`/nets/${place.netId}/revisions`).expect(200);
+    expect(body.items).toEqual([]);
+    expect(await mailsFor(place.reviewer.person.id)).toEqual([]);
+    await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
   });
 
   it('is for engineers of the dam', async () => {
