@@ -3,16 +3,14 @@ import os from 'node:os';
 import path from 'node:path';
 import { aptInstall, canInstall } from '#server/start/apt.mjs';
 import { runCommand } from '#server/start/run-command.mjs';
-import type { DrawingDto } from '#shared/contract/drawings.ts';
 import { a1GroupFour, a1Jpeg } from './a1-sheet.ts';
 import { type ApiClient, signInAtDam } from './api-client.ts';
 import { type Bench, type BenchRow, rowOf } from './bench.ts';
 import { type BenchStand, openBenchStand } from './bench-stand.ts';
 import { peakOfTree } from './process-tree.ts';
+import { uploadSheet } from './upload-sheet.ts';
 
 const RUNS = 3;
-const POLL_MS = 50;
-const PATIENCE_MS = 120_000;
 const MEGABYTE = 1e6;
 
 interface Sample {
@@ -30,25 +28,9 @@ async function timed(work: () => Promise<{ bytes: number }>): Promise<Sample> {
 function uploadToViewable(stand: BenchStand, client: ApiClient, file: Buffer, name: string): Promise<Sample> {
   return timed(() =>
     peakOfTree(stand.serverPid, async () => {
-      const form = new FormData();
-      form.append('file', new Blob([new Uint8Array(file)]), name);
-      const drawing = await client.post<DrawingDto>(`/dams/${client.damId}/drawings`, form);
-      const sheet = await firstSheet(client, drawing.id);
-      await client.getBytes(`/sheets/${sheet.id}/tiles/${sheet.tiles.rendition}/0/0_0`);
+      await uploadSheet(client, file, name);
     }),
   );
-}
-
-async function firstSheet(client: ApiClient, drawingId: string) {
-  const deadline = performance.now() + PATIENCE_MS;
-  while (performance.now() < deadline) {
-    const drawing = await client.get<DrawingDto>(`/drawings/${drawingId}`);
-    if (drawing.job.state === 'refused' || drawing.job.state === 'failed')
-      throw new Error(drawing.job.message);
-    if (drawing.job.state === 'done' && drawing.sheets[0]) return drawing.sheets[0];
-    await new Promise((resolve) => setTimeout(resolve, POLL_MS));
-  }
-  throw new Error('The drawing was not ready within two minutes.');
 }
 
 /** libvips' own way from the same file to tiles of the same size. */

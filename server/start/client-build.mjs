@@ -13,6 +13,8 @@ import path from 'node:path';
 import { faults, say } from './messages.mjs';
 import { lastLines, runCommand } from './run-command.mjs';
 
+/** How long another build of the same pages is waited for. */
+const OTHER_BUILD_MS = 120_000;
 const SOURCES = ['src', 'shared', 'index.html', 'vite.config.ts', 'package-lock.json'];
 
 /** Where the built pages lie. @param {string} root */
@@ -22,13 +24,29 @@ export function clientDir(root) {
 
 /** Builds the pages when their sources have changed since the last build. @param {string} root */
 export async function ensureClient(root) {
-  const stampFile = path.join(root, 'dist', 'client.stamp');
-  const wanted = sourcesStamp(root);
-  if (existsSync(clientDir(root)) && readText(stampFile) === wanted) return;
-  say('Building the pages.');
-  await buildClient(root);
-  writeFileSync(stampFile, wanted);
+  const deadline = Date.now() + OTHER_BUILD_MS;
+  while (!isClientFresh(root)) {
+    const wanted = sourcesStamp(root);
+    say('Building the pages.');
+    const outcome = await buildClient(root);
+    if (outcome.code === 0) return writeFileSync(stampFile(root), wanted);
+    // Two programs of one checkout, such as a start and a test, may want the pages in the same moment.
+    if (!isOtherBuild(outcome.output) || Date.now() > deadline) {
+      throw faults.buildFailed(lastLines(outcome.output, 6));
+    }
+    await new Promise((resolve) => setTimeout(resolve, 1000));
+  }
 }
+
+/** @param {string} root */
+const stampFile = (root) => path.join(root, 'dist', 'client.stamp');
+
+/** @param {string} root */
+const isClientFresh = (root) =>
+  existsSync(clientDir(root)) && readText(stampFile(root)) === sourcesStamp(root);
+
+/** @param {string} output */
+const isOtherBuild = (output) => output.includes('Found another Vite build process');
 
 /**
  * Builds beside the present pages and then changes places, so that a failed build leaves the old ones and a
@@ -47,12 +65,13 @@ async function buildClient(root) {
   });
   if (build.code !== 0) {
     rmSync(draft, { recursive: true, force: true });
-    throw faults.buildFailed(lastLines(build.output, 6));
+    return build;
   }
   rmSync(`${target}.old`, { recursive: true, force: true });
   if (existsSync(target)) renameSync(target, `${target}.old`);
   renameSync(draft, target);
   rmSync(`${target}.old`, { recursive: true, force: true });
+  return build;
 }
 
 /** Changes when any source changes, whatever its date says. @param {string} root */
