@@ -39,6 +39,8 @@ function shareStream(): () => void {
   channel.onmessage = (event: MessageEvent<LiveMessage>) => tell(event.data);
   const lead = () =>
     new Promise<void>((resolve) => {
+      // Granted just as this tab stopped listening.
+      if (left.signal.aborted) return resolve();
       const end = openStream((message) => {
         tell(message);
         channel.postMessage(message);

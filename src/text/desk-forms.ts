@@ -6,8 +6,6 @@ export const formText = {
   show: 'Show',
   remove: 'Remove',
   removeNamed: (name: string) => `Remove ${name}`,
-  readOnly: 'You can read this net but not change it.',
-  optional: 'may stay empty',
   source: 'Source',
   sourceHint: 'Where the figures come from: drawing, report, operator.',
 } as const;
@@ -69,9 +67,12 @@ export const waterText = {
   below: 'The headwater lies below the tailwater. Check both figures.',
   boundaries: 'Boundaries that carry a head',
   noBoundaries: 'None traced yet. Trace the face under the headwater and the outlet as boundaries.',
-  traceHeadwater: 'Trace the face under the headwater',
-  traceOutlet: 'Trace the outlet',
-  drain: 'Drain',
+  trace: {
+    headwaterFace: 'Trace the face under the headwater',
+    tailwaterFace: 'Trace the bed under the tailwater',
+    drain: 'Trace a drain',
+    outflowFace: 'Trace a face of free outflow',
+  },
   drainStates: { empty: 'empty: its own elevation', pressure: 'under pressure' },
   drainHead: (unit: string) => `Head in the drain, ${unit}`,
   carries: {
@@ -80,7 +81,7 @@ export const waterText = {
     own: 'water comes out freely: its own elevation',
     unsaid: 'not said whose level it carries',
   },
-  labels: { levels: 'changed the water levels', drain: (name: string) => `changed the head of ${name}` },
+  labels: { levels: 'changed the water levels' },
 } as const;
 
 export const permeabilityText = {

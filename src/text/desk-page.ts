@@ -1,12 +1,12 @@
 /** Words of the desk as a page. */
 export const deskPageText = {
+  /** The section as it is named on the drawing: "Section B–B", "Spillway axis". */
   sectionAt: (section: string, chainage: string) =>
-    chainage === '' ? `Section ${section}` : `Section ${section}, chainage ${chainage}`,
+    chainage === '' ? section : `${section}, chainage ${chainage}`,
   drawingRevision: (number: string, revision: string) =>
     revision === '' ? number : `${number} rev ${revision}`,
   untitledDrawing: 'Drawing',
   sheetLabel: (section: string, drawing: string) => `${section} on drawing ${drawing}`,
-  opening: 'Opening the net…',
   panes: { sheet: 'Sheet', schedule: 'Schedule', notes: 'Notes', block: 'Title block' },
   panesLabel: 'Parts of the desk',
   noticeClose: 'Close',

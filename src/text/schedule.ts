@@ -5,6 +5,7 @@ export const scheduleText = {
     `${datum === '' ? 'elevations as typed' : `elevations to ${datum}`}, pressure with γw = ${gammaW} ${unit}`,
   provisional: '± provisional',
   unfinished: 'Net unfinished',
+  unfinishedRow: 'no figure, net unfinished',
   workingOut: 'working out…',
   failed: 'The reading could not be worked out. Undo the last change, or reload the page.',
   head: {

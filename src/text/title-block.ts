@@ -2,7 +2,6 @@
 export const titleBlockText = {
   name: 'Title block',
   labels: {
-    netName: 'Load case',
     section: 'Section',
     dam: 'Dam',
     scale: 'Scale',
@@ -14,6 +13,7 @@ export const titleBlockText = {
     outflowFace: 'Outflow face',
     drops: 'Drops',
     channels: 'Channels',
+    tracedChannels: 'Traced channels',
     headPerDrop: 'Head per drop',
     permeability: 'Permeability',
     seepagePerMetre: 'Seepage per metre',
@@ -23,8 +23,11 @@ export const titleBlockText = {
     checked: 'Checked',
     calculation: 'Calculation',
   },
-  sectionAt: (section: string, chainage: string) =>
-    chainage === '' ? section : `${section} at chainage ${chainage}`,
+  /** The label says "Section" already, and many sections are named so. */
+  sectionAt: (section: string, chainage: string) => {
+    const name = section.replace(/^section\s+/i, '');
+    return chainage === '' ? name : `${name} at chainage ${chainage}`;
+  },
   perPixel: (figure: string, unit: string) => `${figure} ${unit}/px`,
   knownPointsNeeded: 'Known points needed',
   upUnclear: 'Which way is up?',
@@ -39,7 +42,6 @@ export const titleBlockText = {
   dropsNeeded: 'Needed',
   dropsTraced: (count: string) => `${count} traced`,
   channelsNone: 'None',
-  channelsTracedOnly: (count: string) => `${count} traced only`,
   unequal: 'Unequal intervals',
   notYet: 'Net unfinished',
   permeabilityNeeded: 'Value needed',
@@ -57,8 +59,7 @@ export const titleBlockText = {
     returned: (name: string) => `${name}, returned`,
   },
   revisions: (count: number) => (count === 0 ? 'none' : String(count)),
-  working: 'working out',
-  state: { missing: 'missing', wrong: 'wrong', question: 'check this', ok: '' },
+  state: { missing: 'incomplete', wrong: 'wrong', question: 'check this', ok: '' },
   step: {
     section: 'Show the load case',
     dam: 'Go to the dam',

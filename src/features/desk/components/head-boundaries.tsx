@@ -4,6 +4,7 @@ import { formText, lineText, waterText as text } from '#client/text/desk-forms.t
 import type { TracedLine } from '#shared/contract/document.ts';
 
 type Line = { id: string; value: TracedLine };
+type TraceChoice = keyof typeof text.trace;
 const CARRIERS: readonly TracedLine['line'][] = ['submergedFace', 'outflowFace', 'drain'];
 
 /** The traced boundaries that carry a head of their own, each with what it carries and the way to change it. */
@@ -38,12 +39,11 @@ export function HeadBoundaries({
       </ul>
       {disabled ? null : (
         <div className="mt-1 flex flex-wrap gap-2">
-          <Button look="quiet" onClick={() => onTrace('headwaterFace')}>
-            {text.traceHeadwater}
-          </Button>
-          <Button look="quiet" onClick={() => onTrace('drain')}>
-            {text.traceOutlet}
-          </Button>
+          {(Object.keys(text.trace) as TraceChoice[]).map((boundary) => (
+            <Button key={boundary} look="quiet" onClick={() => onTrace(boundary)}>
+              {text.trace[boundary]}
+            </Button>
+          ))}
         </div>
       )}
     </section>

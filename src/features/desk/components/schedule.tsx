@@ -52,6 +52,7 @@ export function Schedule({ document, reading, onEdit, selectedIds, onSelect }: S
             <Row
               point={point}
               document={document}
+              unfinished={reading.state === 'unfinished'}
               onEdit={onEdit}
               selected={selectedIds.includes(point.id)}
               onSelect={onSelect}
@@ -105,6 +106,8 @@ function Head({
 interface RowProps {
   point: PointReading;
   document: FlowNetDocument;
+  /** The reason is said once above the table, not in every row. */
+  unfinished: boolean;
   onEdit: ScheduleProps['onEdit'];
   selected: boolean;
   onSelect: ScheduleProps['onSelect'];
@@ -112,7 +115,7 @@ interface RowProps {
   onToggle: () => void;
 }
 
-function Row({ point, document, onEdit, selected, onSelect, open, onToggle }: RowProps) {
+function Row({ point, document, unfinished, onEdit, selected, onSelect, open, onToggle }: RowProps) {
   const name = point.name || text.unnamed;
   return (
     <tr
@@ -132,7 +135,7 @@ function Row({ point, document, onEdit, selected, onSelect, open, onToggle }: Ro
         <NameCell point={point} document={document} onEdit={onEdit} />
       </th>
       <PlaceCells point={point} document={document} onEdit={onEdit} name={name} />
-      <FigureCells point={point} document={document} />
+      <FigureCells point={point} document={document} unfinished={unfinished} />
       <td className={classNames(CELL, 'w-px text-right whitespace-nowrap')}>
         <button
           type="button"
@@ -208,12 +211,12 @@ function PlaceCells({
 
 const rounded = (value: number | null) => (value === null ? null : Number(value.toFixed(3)));
 
-function FigureCells({ point, document }: Pick<RowProps, 'point' | 'document'>) {
+function FigureCells({ point, document, unfinished }: Pick<RowProps, 'point' | 'document' | 'unfinished'>) {
   const figures = pointFigures(point, document);
   if (point.status === 'withheld') {
     return (
       <td colSpan={4} className={classNames(CELL, 'text-attention')}>
-        {pointRemark(point) || text.reading}
+        {unfinished ? text.unfinishedRow : pointRemark(point) || text.reading}
       </td>
     );
   }

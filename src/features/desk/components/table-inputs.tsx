@@ -4,7 +4,7 @@ import { useTypedText } from './use-typed-text.ts';
 
 /** Inputs that look like the table's own figures until they are pointed at or hold the focus. */
 const IN_TABLE =
-  'w-full min-w-[64px] rounded-sheet border bg-transparent px-1.5 py-[3px] hover:border-edge focus:border-edge focus:bg-white';
+  'w-full min-w-[64px] rounded-sheet border bg-transparent px-1.5 py-px hover:border-edge focus:border-edge focus:bg-white';
 
 interface TableNumberProps {
   label: string;
@@ -26,7 +26,11 @@ export function TableNumber({ label, value, shown, onCommit, disabled = false }:
         aria-label={label}
         aria-invalid={error ? true : undefined}
         disabled={disabled}
-        className={classNames(IN_TABLE, 'text-right', error ? 'border-wrong' : 'border-transparent')}
+        className={classNames(
+          IN_TABLE,
+          '-mr-[7px] text-right',
+          error ? 'border-wrong' : 'border-transparent',
+        )}
         {...input}
       />
       {error ? (
@@ -57,7 +61,7 @@ export function TableText({
       spellCheck={false}
       aria-label={label}
       maxLength={maxLength}
-      className={classNames(IN_TABLE, 'border-transparent font-semibold')}
+      className={classNames(IN_TABLE, '-ml-[7px] border-transparent font-semibold')}
       {...input}
     />
   );

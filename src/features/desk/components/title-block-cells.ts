@@ -17,6 +17,8 @@ export interface TitleCell {
   label: string;
   value: readonly Run[];
   state: CellState;
+  /** True when the value itself says what is the matter, so that the label need not. */
+  said: boolean;
   findings: readonly Finding[];
 }
 
@@ -39,7 +41,8 @@ export function titleBlockCells(
 ): TitleCell[] {
   const cell = (id: CellId, told: Told): TitleCell => {
     const findings = (reading?.findings ?? []).filter((found) => found.cell === id);
-    return { id, label: told.label, value: told.value, state: told.state ?? stateFrom(findings), findings };
+    const { label, value, state } = told;
+    return { id, label, value, state: state ?? stateFrom(findings), said: state !== undefined, findings };
   };
   const { labels } = text;
   const { section } = facts;
@@ -146,10 +149,10 @@ function channelsOf(reading: NetReading | null): Told {
   if (!reading) return { label, value: WAITING };
   const { channels, channelsComplete } = reading.quantities;
   if (channels === null) return { label, value: [text.channelsNone], state: 'missing' };
-  const count = plainText(channels);
+  const value = [plainText(channels)];
   return channelsComplete
-    ? { label, value: [count] }
-    : { label, value: [text.channelsTracedOnly(count)], state: 'question' };
+    ? { label, value }
+    : { label: text.labels.tracedChannels, value, state: 'question' };
 }
 
 function headPerDropOf(document: FlowNetDocument, reading: NetReading | null): Told {

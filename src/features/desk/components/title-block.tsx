@@ -52,7 +52,8 @@ export function TitleBlock({ cells, stale, open, onStep }: TitleBlockProps) {
   );
 }
 
-const CELL = 'min-h-[43px] min-w-0 px-2 pt-1 pb-[5px] text-left leading-[1.3] break-words';
+const CELL =
+  'flex flex-col items-start justify-start min-h-[43px] min-w-0 px-2 pt-1 pb-[5px] text-left leading-[1.3] [overflow-wrap:anywhere]';
 
 function Cell({ cell, open, onStep }: { cell: TitleCell; open: boolean; onStep: TitleBlockProps['onStep'] }) {
   const doubtful = cell.state !== 'ok';
@@ -95,7 +96,7 @@ function Content({ cell }: { cell: TitleCell }) {
     <>
       <span className="block text-[11.5px] leading-[1.25] text-ink-2">
         {cell.label}
-        {cell.state === 'ok' ? null : (
+        {cell.state === 'ok' || cell.said ? null : (
           <span className={FACT_COLOURS[cell.state]}> · {text.state[cell.state]}</span>
         )}
       </span>

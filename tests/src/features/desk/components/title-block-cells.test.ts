@@ -90,7 +90,7 @@ describe('the title block', () => {
     expect(block({}, traced).cell('seepage')).toBe(
       'Seepage per metre: 1.2 × 10^−6 m^3/s, traced channels only [question]',
     );
-    expect(block({}, traced).cell('channels')).toBe('Channels: 3 traced only [question]');
+    expect(block({}, traced).cell('channels')).toBe('Traced channels: 3 [question]');
   });
 
   it('has no single head per drop where the intervals are unequal', () => {
