@@ -200,8 +200,8 @@ describe('inside the client', () => {
   });
 
   it("the desk's model and tools know neither React nor fabric", () => {
-    const faults = [...from('src/features/desk/model/'), ...from('src/features/desk/tools/')].filter(
-      (each) => ['react', 'react-dom', 'fabric'].includes(packageOf(each.to)),
+    const faults = [...from('src/features/desk/model/'), ...from('src/features/desk/tools/')].filter((each) =>
+      ['react', 'react-dom', 'fabric'].includes(packageOf(each.to)),
     );
     expect(faults.map(says)).toEqual([]);
   });
