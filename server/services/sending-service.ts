@@ -37,21 +37,28 @@ export function createSendingService(deps: SendingDeps) {
     if (isRepeat) return revisionSummaryOf(manager, input.id);
     await refuseTakenId(manager, RevisionEntity, input.id, 'revision');
     if (changeNumber !== input.changeNumber) throw changedMeanwhile(changeNumber);
-
     const place = await placeOfNet(manager, netId);
+    const previous = await newestRevision(manager, netId);
+    const { payload, reviewer } = await draw(place, previous, input, actor);
+    await insertRevision(payload, numberAfter(previous), changeNumber);
+    await tell(payload, place, reviewer, actor);
+    return revisionSummaryOf(manager, input.id);
+  }
+
+  /** What is to be frozen, once nothing stands in its way, and whom it goes to. */
+  async function draw(place: NetPlace, previous: RevisionEntity | null, input: SendInput, actor: Actor) {
     const document = await readDocument(manager, place);
     const reading = readNet(document);
-    const previous = await newestRevision(manager, netId);
     const reviewers = await reviewersOfDam(manager, place.dam.id);
     const refusal = await sendingRefusal(manager, place, reading, previous, reviewers);
     if (refusal) throw refusal;
-    const drawnBy = await drawersOfNet(manager, netId);
+    const drawnBy = await drawersOfNet(manager, place.net.id);
     const reviewer = chooseReviewer(reviewers, input.reviewerId, drawnBy, actor);
     const payload: RevisionPayload = {
       ...placeFacts(place),
       payloadVersion: 1,
       revisionId: input.id,
-      label: revisionLabel((previous?.number ?? 0) + 1),
+      label: revisionLabel(numberAfter(previous)),
       document,
       reading,
       engineVersion: ENGINE_VERSION,
@@ -62,9 +69,7 @@ export function createSendingService(deps: SendingDeps) {
       message: wellFormed(input.message),
       previousHash: previous?.payloadHash ?? null,
     };
-    await insertRevision(payload, (previous?.number ?? 0) + 1, changeNumber);
-    await tell(payload, place, reviewer, actor);
-    return revisionSummaryOf(manager, input.id);
+    return { payload, reviewer };
   }
 
   async function insertRevision(payload: RevisionPayload, number: number, changeNumber: number) {
@@ -112,6 +117,8 @@ export function createSendingService(deps: SendingDeps) {
 
   return { send };
 }
+
+const numberAfter = (previous: RevisionEntity | null) => (previous?.number ?? 0) + 1;
 
 function placeFacts({ net, section, sheet, drawing, dam }: NetPlace) {
   const { id, number, title, revision, sha256 } = drawing;

@@ -3,19 +3,16 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { PersonEntity } from '#server/entities/person-entity.ts';
 import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import type { DamRole } from '#shared/contract/actions.ts';
 import { netReading } from '#shared/contract/reading.ts';
+import { addFinishedNet, addNet, openNet } from '#tests/support/net-fixture.ts';
 import {
-  addFinishedNet,
-  addNet,
-  batchesOf,
-  lineOf,
-  type NetPlaceFixture,
-  openNet,
-  put,
-} from '#tests/support/net-fixture.ts';
+  addRolePerson,
+  beginLine,
+  mailsFor,
+  readyToSend,
+  sendInputFor,
+} from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
-import { addMember } from '#tests/support/test-people.ts';
 
 let app: TestApp;
 beforeAll(async () => {
@@ -23,49 +20,23 @@ beforeAll(async () => {
 });
 afterAll(() => app.close());
 
-async function addPerson(damId: string, name: string, ...roles: DamRole[]) {
-  const { person, caller } = await app.signIn(name);
-  await addMember(app.db, damId, person.id, ...roles);
-  return { person, caller };
-}
-
-/** A finished net with a reviewer who did not draw it. */
-async function readyToSend() {
-  const place = await addFinishedNet(app);
-  const reviewer = await addPerson(place.damId, 'Remi Okafor', 'reviewer');
-  return { ...place, reviewer };
-}
-
-async function sendInputFor({ caller, netId }: NetPlaceFixture, reviewerId: string, id = uuidv7()) {
-  const { changeNumber } = await openNet(caller, netId);
-  return { id, reviewerId, message: 'Please look at line 3.', changeNumber };
-}
-
-const mailsFor = (personId: string): Promise<Array<{ subject: string; text: string; id: string }>> =>
-  app.db.query('SELECT id, subject, text FROM outbox_mail WHERE person_id = $1 ORDER BY id', [personId]);
-
-const spare = lineOf([
-  [3, 3],
-  [4, 9],
-]);
-
 describe('before sending for checking', () => {
   it('an unfinished net says what stands in the way, and may not be sent', async () => {
     const place = await addNet(app);
-    const reviewer = await addPerson(place.damId, 'Remi Okafor', 'reviewer');
+    const reviewer = await addRolePerson(app, place.damId, 'Remi Okafor', 'reviewer');
     const { body } = await place.caller.get(`/nets/${place.netId}/sending`).expect(200);
     expect(body.refusal).toMatch(/unfinished/);
     expect(body.findings.length).toBeGreaterThan(0);
     const input = await sendInputFor(place, reviewer.person.id);
     const refused = await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(422);
     expect(refused.body.code).toBe('net-unfinished');
-    expect(await mailsFor(reviewer.person.id)).toEqual([]);
+    expect(await mailsFor(app, reviewer.person.id)).toEqual([]);
   });
 
   it('the reviewers are named, those who drew among them, and the open notes counted', async () => {
-    const { caller, netId, damId, reviewer } = await readyToSend();
-    const both = await addPerson(damId, 'Ada Both', 'engineer', 'reviewer');
-    await both.caller.post(`/nets/${netId}/commands`, batchesOf()([put(spare)])).expect(200);
+    const { caller, netId, damId, reviewer } = await readyToSend(app);
+    const both = await addRolePerson(app, damId, 'Ada Both', 'engineer', 'reviewer');
+    await beginLine(both.caller, netId);
     const note = { id: uuidv7(), anchor: { on: 'place', at: [1, 1] }, text: 'Why?' };
     await reviewer.caller.post(`/nets/${netId}/notes`, note).expect(201);
     const { body } = await caller.get(`/nets/${netId}/sending`).expect(200);
@@ -83,8 +54,8 @@ describe('before sending for checking', () => {
 
   it('a reviewer who is deactivated or has not accepted the invitation is not offered', async () => {
     const { caller, netId, damId } = await addFinishedNet(app);
-    const gone = await addPerson(damId, 'Gone Away', 'reviewer');
-    const invited = await addPerson(damId, 'Not Yet', 'reviewer');
+    const gone = await addRolePerson(app, damId, 'Gone Away', 'reviewer');
+    const invited = await addRolePerson(app, damId, 'Not Yet', 'reviewer');
     await app.db.getRepository(PersonEntity).update({ id: gone.person.id }, { deactivatedAt: new Date() });
     await app.db.getRepository(PersonEntity).update({ id: invited.person.id }, { passwordHash: null });
     const { body } = await caller.get(`/nets/${netId}/sending`).expect(200);
@@ -94,7 +65,7 @@ describe('before sending for checking', () => {
 
 describe('sending for checking', () => {
   it('freezes the net with its figures and tells the reviewer by mail', async () => {
-    const place = await readyToSend();
+    const place = await readyToSend(app);
     const { caller, netId, damId, engineer, reviewer } = place;
     const input = await sendInputFor(place, reviewer.person.id);
     app.live.published.length = 0;
@@ -123,7 +94,7 @@ describe('sending for checking', () => {
     expect(opened.payload.reading).toEqual(JSON.parse(JSON.stringify(netReading.parse(readNet(document)))));
     expect(opened.decideRefusal).toBeNull();
 
-    const [mail] = await mailsFor(reviewer.person.id);
+    const [mail] = await mailsFor(app, reviewer.person.id);
     expect(mail?.subject).toBe(
       'For checking: Harrow Fen Dam, HF-114 rev C, Section B–B, chainage 212, revision A',
     );
@@ -138,17 +109,17 @@ describe('sending for checking', () => {
   });
 
   it('does it once when the same sending is repeated', async () => {
-    const place = await readyToSend();
+    const place = await readyToSend(app);
     const input = await sendInputFor(place, place.reviewer.person.id);
     const first = await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
     const second = await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
     expect(second.body).toEqual(first.body);
-    expect(await mailsFor(place.reviewer.person.id)).toHaveLength(1);
+    expect(await mailsFor(app, place.reviewer.person.id)).toHaveLength(1);
   });
 
   it('gives one revision when two people send at the same moment', async () => {
-    const place = await readyToSend();
-    const other = await addPerson(place.damId, 'Sana Verma', 'engineer');
+    const place = await readyToSend(app);
+    const other = await addRolePerson(app, place.damId, 'Sana Verma', 'engineer');
     const inputs = await Promise.all([1, 2].map(() => sendInputFor(place, place.reviewer.person.id)));
     const answers = await Promise.all(
       [place.caller, other.caller].map((caller, i) =>
@@ -158,27 +129,25 @@ describe('sending for checking', () => {
     expect(answers.map((answer) => answer.status).sort()).toEqual([201, 409]);
     const { body } = await place.caller.get(`/nets/${place.netId}/revisions`).expect(200);
     expect(body.items).toHaveLength(1);
-    expect(await mailsFor(place.reviewer.person.id)).toHaveLength(1);
+    expect(await mailsFor(app, place.reviewer.person.id)).toHaveLength(1);
   });
 
   it('is refused when the net was changed after the sender looked', async () => {
-    const place = await readyToSend();
+    const place = await readyToSend(app);
     const input = await sendInputFor(place, place.reviewer.person.id);
-    await place.caller.post(`/nets/${place.netId}/commands`, batchesOf()([put(spare)])).expect(200);
+    await beginLine(place.caller, place.netId);
     const { body } = await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(409);
     expect(body).toMatchObject({ code: 'conflict', extra: { changeNumber: input.changeNumber + 1 } });
   });
 
   it('is refused to somebody who drew, to oneself, and to who is no reviewer', async () => {
-    const place = await readyToSend();
-    const both = await addPerson(place.damId, 'Ada Both', 'engineer', 'reviewer');
-    const colleague = await addPerson(place.damId, 'Tove Lind', 'colleague');
+    const place = await readyToSend(app);
+    const both = await addRolePerson(app, place.damId, 'Ada Both', 'engineer', 'reviewer');
+    const colleague = await addRolePerson(app, place.damId, 'Tove Lind', 'colleague');
     const toSelf = await sendInputFor(place, both.person.id);
     const self = await both.caller.post(`/nets/${place.netId}/revisions`, toSelf).expect(422);
     expect(self.body.code).toBe('own-work');
-    await both.caller
-      .post(`/nets/${place.netId}/commands`, batchesOf()([put({ ...spare, finished: false })]))
-      .expect(200);
+    await beginLine(both.caller, place.netId);
     const toDrawer = await sendInputFor(place, both.person.id);
     const drawer = await place.caller.post(`/nets/${place.netId}/revisions`, toDrawer).expect(422);
     expect(drawer.body.code).toBe('own-work');
@@ -187,7 +156,7 @@ describe('sending for checking', () => {
   });
 
   it('is not done a second time unchanged while the reviewer has it, but may go to another when that one has left', async () => {
-    const place = await readyToSend();
+    const place = await readyToSend(app);
     const { caller, netId, reviewer, damId } = place;
     await caller.post(`/nets/${netId}/revisions`, await sendInputFor(place, reviewer.person.id)).expect(201);
     const { body } = await caller.get(`/nets/${netId}/sending`).expect(200);
@@ -196,7 +165,7 @@ describe('sending for checking', () => {
       refusal: expect.stringMatching(/Remi Okafor as revision A/),
     });
     await caller.post(`/nets/${netId}/revisions`, await sendInputFor(place, reviewer.person.id)).expect(409);
-    const second = await addPerson(damId, 'Lena Fogh', 'reviewer');
+    const second = await addRolePerson(app, damId, 'Lena Fogh', 'reviewer');
     await app.db
       .getRepository(PersonEntity)
       .update({ id: reviewer.person.id }, { deactivatedAt: new Date() });
@@ -207,7 +176,7 @@ describe('sending for checking', () => {
   });
 
   it('leaves nothing behind when its mail cannot be queued', async () => {
-    const place = await readyToSend();
+    const place = await readyToSend(app);
     const input = await sendInputFor(place, place.reviewer.person.id);
     const { enqueue } = app.jobs;
     app.jobs.enqueue = async () => {
@@ -217,136 +186,14 @@ describe('sending for checking', () => {
     app.jobs.enqueue = enqueue;
     const { body } = await place.caller.get(`/nets/${place.netId}/revisions`).expect(200);
     expect(body.items).toEqual([]);
-    expect(await mailsFor(place.reviewer.person.id)).toEqual([]);
+    expect(await mailsFor(app, place.reviewer.person.id)).toEqual([]);
     await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
   });
 
   it('is for engineers of the dam', async () => {
-    const place = await readyToSend();
+    const place = await readyToSend(app);
     const input = await sendInputFor(place, place.reviewer.person.id);
     await place.reviewer.caller.post(`/nets/${place.netId}/revisions`, input).expect(403);
     await place.reviewer.caller.get(`/nets/${place.netId}/sending`).expect(403);
-  });
-});
-
-describe('deciding', () => {
-  async function sent() {
-    const place = await readyToSend();
-    const input = await sendInputFor(place, place.reviewer.person.id);
-    await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
-    return { ...place, revisionId: input.id };
-  }
-
-  it('needs a note when the revision is returned', async () => {
-    const { revisionId, reviewer } = await sent();
-    const { body } = await reviewer.caller
-      .post(`/revisions/${revisionId}/decision`, { decision: 'returned', note: '  ' })
-      .expect(400);
-    expect(body.errors[0].path).toBe('note');
-  });
-
-  it('accepts once, and mails the sender and who drew', async () => {
-    const { revisionId, reviewer, netId, caller, engineer } = await sent();
-    const accept = { decision: 'accepted', note: '' };
-    const { body } = await reviewer.caller.post(`/revisions/${revisionId}/decision`, accept).expect(201);
-    expect(body.summary.decision).toMatchObject({
-      decision: 'accepted',
-      decidedBy: { name: 'Remi Okafor' },
-    });
-    expect(body.decideRefusal).toMatch(/has been decided/);
-    const again = await reviewer.caller.post(`/revisions/${revisionId}/decision`, accept).expect(409);
-    expect(again.body.code).toBe('already-decided');
-    expect((await openNet(caller, netId)).net).toMatchObject({ state: 'accepted', revisionLabel: 'A' });
-    const mails = await mailsFor(engineer.id);
-    expect(mails.map((mail) => mail.subject)).toEqual([
-      'Accepted: Harrow Fen Dam, HF-114 rev C, Section B–B, chainage 212, revision A',
-    ]);
-  });
-
-  it('takes one of two decisions made at the same moment', async () => {
-    const { revisionId, reviewer } = await sent();
-    const answers = await Promise.all(
-      ['accepted', 'returned'].map((decision) =>
-        reviewer.caller.post(`/revisions/${revisionId}/decision`, { decision, note: 'Seen.' }),
-      ),
-    );
-    expect(answers.map((answer) => answer.status).sort()).toEqual([201, 409]);
-  });
-
-  it('returns with a note, after which a changed net is sent as the next letter, chained to the one before', async () => {
-    const place = await sent();
-    const { revisionId, reviewer, netId, caller } = place;
-    const back = { decision: 'returned', note: 'Line 3 is off.' };
-    await reviewer.caller.post(`/revisions/${revisionId}/decision`, back).expect(201);
-    expect((await openNet(caller, netId)).net.state).toBe('returned');
-    await caller
-      .post(`/nets/${netId}/commands`, batchesOf()([put({ ...spare, finished: false })]))
-      .expect(200);
-    expect((await openNet(caller, netId)).net.changedSinceRevision).toBe(true);
-    const input = await sendInputFor(place, reviewer.person.id);
-    const second = await caller.post(`/nets/${netId}/revisions`, input).expect(201);
-    expect(second.body.label).toBe('B');
-    const first = await reviewer.caller.get(`/revisions/${revisionId}`).expect(200);
-    const opened = await reviewer.caller.get(`/revisions/${input.id}`).expect(200);
-    expect(opened.body.payload.previousHash).toBe(first.body.summary.hash);
-  });
-
-  it('is refused to who drew, also when an engineer and reviewer in one person', async () => {
-    const place = await sent();
-    const both = await addPerson(place.damId, 'Ada Both', 'engineer', 'reviewer');
-    await both.caller
-      .post(`/nets/${place.netId}/commands`, batchesOf()([put({ ...spare, finished: false })]))
-      .expect(200);
-    const input = await sendInputFor(place, place.reviewer.person.id);
-    await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
-    const accept = { decision: 'accepted', note: '' };
-    const { body } = await both.caller.post(`/revisions/${input.id}/decision`, accept).expect(403);
-    expect(body.code).toBe('own-work');
-    const seen = await both.caller.get(`/revisions/${input.id}`).expect(200);
-    expect(seen.body.decideRefusal).toMatch(/another person has to check it/);
-  });
-
-  it('is refused to another reviewer, to an engineer, and on a revision that was followed by a later one', async () => {
-    const place = await sent();
-    const accept = { decision: 'accepted', note: '' };
-    const other = await addPerson(place.damId, 'Lena Fogh', 'reviewer');
-    const refused = await other.caller.post(`/revisions/${place.revisionId}/decision`, accept).expect(403);
-    expect(refused.body.detail).toMatch(/another reviewer/);
-    await place.caller.post(`/revisions/${place.revisionId}/decision`, accept).expect(403);
-    await place.caller
-      .post(`/nets/${place.netId}/commands`, batchesOf()([put({ ...spare, finished: false })]))
-      .expect(200);
-    const input = await sendInputFor(place, place.reviewer.person.id);
-    await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
-    const late = await place.reviewer.caller
-      .post(`/revisions/${place.revisionId}/decision`, accept)
-      .expect(409);
-    expect(late.body.detail).toMatch(/Revision B of this net was sent since/);
-  });
-
-  it('waits while the net is put away', async () => {
-    const { revisionId, reviewer, netId, caller } = await sent();
-    await caller.post(`/nets/${netId}/archive`).expect(200);
-    const accept = { decision: 'accepted', note: '' };
-    await reviewer.caller.post(`/revisions/${revisionId}/decision`, accept).expect(409);
-    const { body } = await reviewer.caller.get(`/revisions/${revisionId}`).expect(200);
-    expect(body.decideRefusal).toMatch(/put away/);
-    expect(body.can).not.toContain('revision.decide');
-    await caller.post(`/nets/${netId}/restore`).expect(200);
-    await reviewer.caller.post(`/revisions/${revisionId}/decision`, accept).expect(201);
-  });
-
-  it('is not for somebody who is a reviewer of the dam no longer', async () => {
-    const { revisionId, reviewer, damId } = await sent();
-    await app.db.query('UPDATE membership SET roles = $1 WHERE dam_id = $2 AND person_id = $3', [
-      ['colleague'],
-      damId,
-      reviewer.person.id,
-    ]);
-    await reviewer.caller
-      .post(`/revisions/${revisionId}/decision`, { decision: 'accepted', note: '' })
-      .expect(403);
-    const { body } = await reviewer.caller.get(`/revisions/${revisionId}`).expect(200);
-    expect(body.decideRefusal).toMatch(/Only a reviewer/);
   });
 });

@@ -1,0 +1,59 @@
+import { v7 as uuidv7 } from 'uuid';
+import type { DamRole } from '#shared/contract/actions.ts';
+import type { Caller } from './caller.ts';
+import { addFinishedNet, batchesOf, lineOf, type NetPlaceFixture, openNet, put } from './net-fixture.ts';
+import type { TestApp } from './test-app.ts';
+import { addMember, type TestPerson } from './test-people.ts';
+
+export interface SignedIn {
+  person: TestPerson;
+  caller: Caller;
+}
+export interface ReadyNet extends NetPlaceFixture {
+  reviewer: SignedIn;
+}
+
+/** Somebody with parts on the dam, signed in. */
+export async function addRolePerson(
+  app: TestApp,
+  damId: string,
+  name: string,
+  ...roles: DamRole[]
+): Promise<SignedIn> {
+  const { person, caller } = await app.signIn(name);
+  await addMember(app.db, damId, person.id, ...roles);
+  return { person, caller };
+}
+
+/** A finished net with a reviewer who did not draw it. */
+export async function readyToSend(app: TestApp): Promise<ReadyNet> {
+  const place = await addFinishedNet(app);
+  return { ...place, reviewer: await addRolePerson(app, place.damId, 'Remi Okafor', 'reviewer') };
+}
+
+/** What sends the net as it stands to the reviewer. */
+export async function sendInputFor({ caller, netId }: NetPlaceFixture, reviewerId: string) {
+  const { changeNumber } = await openNet(caller, netId);
+  return { id: uuidv7(), reviewerId, message: 'Please look at line 3.', changeNumber };
+}
+
+/** A finished net that was sent to its reviewer. */
+export async function sentRevision(app: TestApp): Promise<ReadyNet & { revisionId: string }> {
+  const place = await readyToSend(app);
+  const input = await sendInputFor(place, place.reviewer.person.id);
+  await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
+  return { ...place, revisionId: input.id };
+}
+
+/** Begins a line, which changes the net and none of its figures. */
+export async function beginLine(caller: Caller, netId: string): Promise<void> {
+  const line = lineOf([[3, 3]], { finished: false });
+  await caller.post(`/nets/${netId}/commands`, batchesOf()([put(line)], 'began a line')).expect(200);
+}
+
+/** The mails queued for a person, oldest first. */
+export const mailsFor = (
+  app: TestApp,
+  personId: string,
+): Promise<Array<{ id: string; subject: string; text: string }>> =>
+  app.db.query('SELECT id, subject, text FROM outbox_mail WHERE person_id = $1 ORDER BY id', [personId]);
