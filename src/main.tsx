@@ -1,6 +1,7 @@
 import './styles/app.css';
 import { createRoot } from 'react-dom/client';
 import { sessionQuery } from './features/session/api/session-queries.ts';
+import { ApiProblem } from './lib/api-problem.ts';
 import { createQueryClient, Providers } from './providers.tsx';
 import { createRouter } from './router.tsx';
 
@@ -10,4 +11,9 @@ void queryClient.prefetchQuery(sessionQuery());
 
 const root = document.getElementById('root');
 if (!root) throw new Error('The page has no element with id root.');
-createRoot(root).render(<Providers queryClient={queryClient} router={createRouter()} />);
+createRoot(root, {
+  onCaughtError: (error) => {
+    // A refusal of the server is shown where it happened; only faults of the page itself belong in the console.
+    if (!(error instanceof ApiProblem)) console.error(error);
+  },
+}).render(<Providers queryClient={queryClient} router={createRouter()} />);

@@ -17,8 +17,9 @@ function isWorthRetrying(failures: number, error: unknown): boolean {
 export function createQueryClient(): QueryClient {
   return new QueryClient({
     defaultOptions: {
-      queries: { staleTime: 10_000, retry: isWorthRetrying },
-      mutations: { retry: false },
+      // `always`: without a connection the page says so at once, instead of waiting silently for one.
+      queries: { staleTime: 10_000, retry: isWorthRetrying, networkMode: 'always' },
+      mutations: { retry: false, networkMode: 'always' },
     },
   });
 }

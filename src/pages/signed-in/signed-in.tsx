@@ -18,7 +18,8 @@ export function SignedIn() {
   const [person, setPerson] = useState(session.person);
   if (session.person && session.person.id !== person?.id) setPerson(session.person);
   useEffect(() => {
-    const timer = setTimeout(() => void loadSignInAgain(), FETCH_AHEAD_MS);
+    // Without a connection it is fetched when it is needed.
+    const timer = setTimeout(() => loadSignInAgain().catch(() => {}), FETCH_AHEAD_MS);
     return () => clearTimeout(timer);
   }, []);
   if (!person) return <Navigate to={signInAndBack(location)} replace />;
