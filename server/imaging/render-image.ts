@@ -1,14 +1,12 @@
 import path from 'node:path';
 import type { Metadata, Sharp } from 'sharp';
-import { flatShare, LINE_WORK_SHARE } from './flatness.ts';
 import { openImage, readHeader, refuseDecoding, statedDpi } from './image-source.ts';
 import { isPlainLab, openLab } from './lab-tiff.ts';
 import { refusals } from './refusal.ts';
 import type { RenderedSheet, RenderRequest, TileFormat } from './render-types.ts';
 import { readTiffPages, type TiffPage } from './tiff-directory.ts';
+import { sampledFormat } from './tile-format.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
-
-const SAMPLE_PX = 1024;
 
 /** Draws one page of a scan at its own size, upright, in 8-bit grey or sRGB on white. @throws RenderRefusal */
 export async function renderImage(
@@ -61,7 +59,6 @@ async function toEightBit(image: Sharp, request: RenderRequest, header: Metadata
   return image.linear(scale, -low * scale);
 }
 
-/** PNG for line work, so that nothing is lost; JPEG for what has grain, where PNG would be many times larger. */
 async function chooseFormat(
   request: RenderRequest,
   header: Metadata,
@@ -69,16 +66,5 @@ async function chooseFormat(
 ): Promise<TileFormat> {
   if (request.kind === 'jpeg') return 'jpeg';
   if (directory?.bitsPerSample === 1 || (header.bitsPerSample ?? 8) <= 2) return 'png';
-  const [width, height] = [Math.min(SAMPLE_PX, header.width), Math.min(SAMPLE_PX, header.height)];
-  const { data, info } = await openImage(request.file, request.pageNumber)
-    .extract({
-      left: Math.floor((header.width - width) / 2),
-      top: Math.floor((header.height - height) / 2),
-      width,
-      height,
-    })
-    .toColourspace('srgb')
-    .raw()
-    .toBuffer({ resolveWithObject: true });
-  return flatShare(data, info.width, info.channels, info.channels) >= LINE_WORK_SHARE ? 'png' : 'jpeg';
+  return sampledFormat(openImage(request.file, request.pageNumber), header.width, header.height);
 }

@@ -8,8 +8,10 @@ import { flatShare, LINE_WORK_SHARE } from './flatness.ts';
 import { openPage, withPdf } from './pdf-document.ts';
 import { type ChosenDpi, chooseDpi, mainScanDpi } from './pdf-dpi.ts';
 import { largestPicturePixels } from './pdf-picture-sizes.ts';
+import { findPageScan } from './pdf-scan.ts';
 import { RenderRefusal, refusals } from './refusal.ts';
 import { isTooLargePicture, pictureWarning, takeWarnings } from './render-log.ts';
+import { renderScan } from './render-scan.ts';
 import type { RenderedSheet, RenderRequest } from './render-types.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
 
@@ -30,8 +32,17 @@ interface DrawnPage extends ChosenDpi {
   isLineWork: boolean;
 }
 
-/** Draws one page of a PDF, turned as the page says, on white. @throws RenderRefusal */
+/** One page of a PDF: a scan as it is, anything else drawn, turned as the page says, on white. @throws RenderRefusal */
 export async function renderPdf(
+  request: RenderRequest,
+  onProgress: (share: number) => void,
+): Promise<RenderedSheet> {
+  const scan = await findPageScan(request.file, request.pageNumber);
+  const asItIs = scan && (await renderScan(scan, request, onProgress));
+  return asItIs || renderDrawn(request, onProgress);
+}
+
+async function renderDrawn(
   request: RenderRequest,
   onProgress: (share: number) => void,
 ): Promise<RenderedSheet> {

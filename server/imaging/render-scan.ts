@@ -1,0 +1,63 @@
+import { rm } from 'node:fs/promises';
+import sharp, { type Sharp } from 'sharp';
+import type { PageScan } from './pdf-scan.ts';
+import type { RenderedSheet, RenderRequest, TileFormat } from './render-types.ts';
+import { writeScan } from './scan-raster.ts';
+import { sampledFormat } from './tile-format.ts';
+import { writeTilePyramid } from './tile-pyramid.ts';
+
+/**
+ * A PDF page that is one scan, shown in the scan's own pixels, upright. Null when the scan is not what the page says
+ * of it or is damaged; the page then has to be drawn.
+ */
+export async function renderScan(
+  scan: PageScan,
+  request: RenderRequest,
+  onProgress: (share: number) => void,
+): Promise<RenderedSheet | null> {
+  const { outFolder } = request;
+  const file = `${outFolder}.scan`;
+  try {
+    await writeScan(scan, file);
+    const open = () => sharp(file, { failOn: 'error', limitInputPixels: false });
+    if (!(await isAsStated(open(), scan))) return null;
+    const format = await formatOf(scan, open());
+    const lying = scan.turns % 2 === 1;
+    const widthPx = lying ? scan.heightPx : scan.widthPx;
+    const heightPx = lying ? scan.widthPx : scan.heightPx;
+    const tiles = await writeTilePyramid(
+      upright(open(), scan),
+      { widthPx, heightPx },
+      format,
+      outFolder,
+      onProgress,
+    );
+    return { widthPx, heightPx, dpi: scan.dpi, note: '', ...tiles };
+  } catch {
+    await Promise.all(
+      [outFolder, `${outFolder}_files`, `${outFolder}.dzi`].map((left) =>
+        rm(left, { recursive: true, force: true }),
+      ),
+    );
+    return null;
+  } finally {
+    await rm(file, { force: true });
+  }
+}
+
+async function isAsStated(image: Sharp, scan: PageScan): Promise<boolean> {
+  const { width, height, channels } = await image.metadata();
+  return width === scan.widthPx && height === scan.heightPx && channels === scan.samples;
+}
+
+/** Turned as the page says; what the picture itself says of its orientation does not count in a PDF. */
+function upright(image: Sharp, scan: PageScan): Sharp {
+  const turned = scan.turns === 0 ? image : image.rotate(scan.turns * 90);
+  const shown = scan.coding === 'jpeg' && scan.inverted ? turned.negate() : turned;
+  return shown.toColourspace(scan.samples === 1 ? 'b-w' : 'srgb');
+}
+
+async function formatOf(scan: PageScan, image: Sharp): Promise<TileFormat> {
+  if (scan.coding === 'jpeg') return 'jpeg';
+  return scan.bits === 1 ? 'png' : sampledFormat(image, scan.widthPx, scan.heightPx);
+}
