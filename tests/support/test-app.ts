@@ -10,14 +10,10 @@ import type { AppDeps } from '#server/app-deps.ts';
 import { type AppConfig, readConfig } from '#server/config/config.ts';
 import { createDataSource } from '#server/entities/data-source.ts';
 import { type Clock, systemClock } from '#server/http/clock.ts';
+import { createMemoryLive, type MemoryLive } from '#server/live/memory-live.ts';
 import { createLocalDiskStorage } from '#server/storage/local-disk-storage.ts';
 import { Caller } from './caller.ts';
-import {
-  createRecordingJobs,
-  createRecordingLive,
-  type RecordingJobs,
-  type RecordingLive,
-} from './recording-ports.ts';
+import { createRecordingJobs, type RecordingJobs } from './recording-jobs.ts';
 import { cloneDatabase, type TestDatabase } from './test-database.ts';
 import { addPerson, type TestPerson } from './test-people.ts';
 
@@ -34,7 +30,7 @@ export interface TestApp {
   db: DataSource;
   database: TestDatabase;
   jobs: RecordingJobs;
-  live: RecordingLive;
+  live: MemoryLive;
   storageDir: string;
   /** Where it listens, on a free port of this machine. */
   address: string;
@@ -51,7 +47,7 @@ export async function createTestApp(options: TestAppOptions = {}): Promise<TestA
   const storageDir = mkdtempSync(path.join(os.tmpdir(), 'tracehead-storage-'));
   const db = await createDataSource({ url: database.appUrl, poolSize: 8 }).initialize();
   const jobs = createRecordingJobs();
-  const live = createRecordingLive();
+  const live = createMemoryLive();
   const deps: AppDeps = {
     config: { ...testConfig(database, storageDir), ...options.config },
     db,

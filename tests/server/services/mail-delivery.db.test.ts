@@ -17,7 +17,7 @@ import {
 } from '#server/services/mail-delivery.ts';
 import { queueMail, sendAgain } from '#server/services/mail-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
-import { createRecordingJobs, type RecordingJobs } from '#tests/support/recording-ports.ts';
+import { createRecordingJobs, type RecordingJobs } from '#tests/support/recording-jobs.ts';
 import { type SmtpStandIn, startSmtpStandIn } from '#tests/support/smtp-stand-in.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 
