@@ -2,11 +2,11 @@
 export const sendingText = {
   button: 'Send for checking',
   title: (label: string) => `Send for checking as revision ${label}`,
-  lead: 'The net, its figures and its notes are frozen as they stand and kept. The reviewer gets a mail with a link.',
+  lead: 'The net and its figures are frozen as they stand and kept. The reviewer gets a mail with a link.',
   unsaved: 'Some changes are not saved yet. They are sent first.',
   unsavedBlocked:
     'Some changes could not be saved, so nothing can be sent. Close this, and see to the saving state at the top.',
-  loading: 'Looking what is still missing…',
+  loading: 'Looking for what is still missing…',
   reviewer: 'Reviewer',
   drew: 'drew this net, so cannot check it',
   noReviewers:

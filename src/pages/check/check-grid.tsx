@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
 import { classNames } from '#client/components/class-names.ts';
+import { useMedia } from '#client/lib/use-media.ts';
 import { checkText as text } from '#client/text/revisions.ts';
 import { PaneSwitch } from '../desk/pane-switch.tsx';
 
@@ -22,19 +23,23 @@ export function CheckGrid(props: CheckGridProps) {
   return props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />;
 }
 
+/** With room for three columns the check stands at the left, where the tools are on the desk. */
+const ROOMY = '(min-width: 1080px)';
+
 function WideGrid({ sheet, schedule, notes, block, check }: CheckGridProps) {
+  const roomy = useMedia(ROOMY);
+  const columns = roomy
+    ? 'grid-cols-[270px_minmax(0,1fr)_340px] xl:grid-cols-[280px_minmax(0,1fr)_372px]'
+    : 'grid-cols-[minmax(0,1fr)_320px]';
   return (
-    <main
-      id="content"
-      className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)_320px] grid-rows-[minmax(0,1fr)_232px] lg:grid-cols-[300px_minmax(0,1fr)_340px] xl:grid-cols-[320px_minmax(0,1fr)_372px]"
-    >
-      <div className="row-span-2 hidden min-h-0 overflow-y-auto border-r border-rule bg-film lg:block">
-        {check}
-      </div>
+    <main id="content" className={`grid min-h-0 flex-1 grid-rows-[minmax(0,1fr)_232px] ${columns}`}>
+      {roomy ? (
+        <div className="row-span-2 min-h-0 overflow-y-auto border-r border-rule bg-film">{check}</div>
+      ) : null}
       <div className="flex min-h-0 min-w-0 flex-col">{sheet}</div>
       <aside className="row-span-2 flex min-h-0 flex-col border-l-[1.5px] border-ink bg-film">
         <div className="flex min-h-0 flex-1 flex-col overflow-y-auto">
-          <div className="shrink-0 border-b border-rule lg:hidden">{check}</div>
+          {roomy ? null : <div className="shrink-0 border-b border-rule">{check}</div>}
           {notes}
         </div>
         <div className="max-h-[60%] shrink-0 overflow-y-auto">{block}</div>

@@ -17,7 +17,7 @@ import {
 import { TableNumber, TableText } from './table-inputs.tsx';
 
 const LONGEST_NAME = 120;
-const CELL = 'border-b border-rule-2 px-2.5 py-[3px]';
+const CELL = 'border-b border-rule-2 px-2 py-[3px]';
 
 interface ScheduleProps {
   document: FlowNetDocument;
@@ -34,7 +34,7 @@ export function Schedule({ document, reading, onEdit, selectedIds, onSelect }: S
   const [openId, setOpenId] = useState<string | null>(null);
   const columns = scheduleColumns(document);
   return (
-    <table className="w-full min-w-[720px]">
+    <table className="w-full min-w-[700px]">
       <caption className="sr-only">{text.title}</caption>
       <thead>
         <tr>
@@ -86,7 +86,7 @@ function Head({
       scope="col"
       aria-sort={sorted ? direction : 'none'}
       className={classNames(
-        'border-b border-rule px-2.5 text-sm font-semibold whitespace-nowrap text-ink-2',
+        'border-b border-rule px-2 text-sm font-semibold whitespace-nowrap text-ink-2',
         first ? 'sticky left-0 bg-film text-left' : 'text-right',
       )}
     >
