@@ -103,13 +103,12 @@ export function Magnifier({ store, renderer, follow }: MagnifierProps) {
   }
 
   return (
-    <div
+    <fieldset
       data-over-sheet
-      role="application"
       aria-label={text.magnifier}
       title={chosen === null ? undefined : text.magnifier}
       tabIndex={chosen === null ? -1 : 0}
-      className="relative touch-none border border-ink bg-film"
+      className="relative m-0 min-w-0 touch-none border border-ink bg-film p-0"
       style={{ width: SIDE_PX, height: SIDE_PX, cursor: chosen === null ? undefined : 'crosshair' }}
       onPointerDown={press}
       onPointerMove={move}
@@ -121,6 +120,6 @@ export function Magnifier({ store, renderer, follow }: MagnifierProps) {
       <span className="pointer-events-none absolute bottom-0.5 left-1 bg-film px-1 text-xs text-ink-2">
         {text.magnified}
       </span>
-    </div>
+    </fieldset>
   );
 }
