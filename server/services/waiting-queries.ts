@@ -7,7 +7,7 @@ import { readingOf } from './schedule-queries.ts';
 export type WaitingItem = WaitingDto['items'][number];
 
 /** Unfinished nets and bare drawings shown at most, newest first: a list of hundreds would say nothing. */
-const MOST_OF_A_KIND = 20;
+const MOST_OF_A_KIND = 10;
 
 interface NetRow {
   dam_id: string;
