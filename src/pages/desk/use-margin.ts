@@ -39,9 +39,15 @@ export function useMargin(
             setMargin(NOTES);
             return setPane('notes');
           case 'openReadingPoint':
-            return setPane('schedule');
+            // While points are being placed the sheet stays to the front.
+            return store.getState().tool === 'readingPoint' ? undefined : setPane('schedule');
           case 'openKnownPoint':
-            return form({ form: 'setOut' });
+            // A point just placed is typed next; one only chosen leaves the keys with the sheet.
+            return form(
+              store.getState().tool === 'knownPoint'
+                ? { form: 'setOut', placedId: intent.id }
+                : { form: 'setOut' },
+            );
           case 'openLine':
             return form({ form: 'line', lineId: intent.id });
           case 'openWaterLevels':
@@ -60,6 +66,15 @@ export function useMargin(
       }
     });
   }, [store, narrow]);
+
+  // A line that goes takes its form with it.
+  const lineId = margin.shows === 'form' && margin.form.form === 'line' ? margin.form.lineId : null;
+  useEffect(() => {
+    if (lineId === null) return;
+    return store.subscribe((state) => {
+      if (!state.document.entities[lineId]) setMargin(NOTES);
+    });
+  }, [store, lineId]);
 
   return { margin, pane, setPane, show, close: () => setMargin(NOTES) };
 }

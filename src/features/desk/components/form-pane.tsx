@@ -13,8 +13,13 @@ export function FormPane({
   children: ReactNode;
 }) {
   const heading = useRef<HTMLHeadingElement>(null);
-  // A pane opened by key or from the title block is read from its head, and the next Tab is its first field.
-  useEffect(() => heading.current?.focus({ preventScroll: true }), []);
+  // A pane opened from the title block is read from its head, and the next Tab is its first field. One that the sheet
+  // or a field has opened leaves the focus there: Delete must still reach the line that was just chosen.
+  useEffect(() => {
+    const held = document.activeElement;
+    const elsewhere = held?.closest('[role="application"], input, select, textarea');
+    if (!elsewhere) heading.current?.focus({ preventScroll: true });
+  }, []);
   return (
     <section aria-label={title} className="flex min-h-0 flex-1 flex-col">
       <div className="flex items-baseline gap-3 border-b border-rule px-3 py-2">

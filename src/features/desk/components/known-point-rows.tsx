@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { formText, setOutText as text } from '#client/text/desk-forms.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
@@ -9,10 +10,23 @@ import { Choice, Figure, Words } from './form-fields.tsx';
 type KnownPoint = { id: string; value: EntityOf<'knownPoint'> };
 
 /** One block for each known point: what is typed for it, what it is used for, and how far off the fit passes it. */
-export function KnownPointRows({ points, ...form }: DeskFormProps & { points: readonly KnownPoint[] }) {
+export function KnownPointRows({
+  points,
+  placedId,
+  ...form
+}: DeskFormProps & {
+  points: readonly KnownPoint[];
+  /** The point just placed: what is typed next is its offset. */
+  placedId: string | null;
+}) {
+  const list = useRef<HTMLUListElement>(null);
+  useEffect(() => {
+    if (placedId)
+      list.current?.querySelector<HTMLInputElement>(`[data-offset-of="${placedId}"] input`)?.focus();
+  }, [placedId]);
   if (points.length === 0) return <p className="m-0 text-ink-2">{text.none}</p>;
   return (
-    <ul className="m-0 list-none border-t border-rule p-0">
+    <ul ref={list} className="m-0 list-none border-t border-rule p-0">
       {points.map((point) => (
         <li key={point.id} className="border-b border-rule py-2">
           <KnownPointRow point={point} {...form} />
@@ -38,13 +52,15 @@ function KnownPointRow({ point, document, reading, disabled, run }: DeskFormProp
           disabled={disabled}
           onCommit={(next) => change({ name: next })}
         />
-        <Figure
-          label={text.offset(unitNames(document.unitSystem).length)}
-          value={value.offset}
-          optional
-          disabled={disabled}
-          onCommit={(offset) => change({ offset })}
-        />
+        <div data-offset-of={id}>
+          <Figure
+            label={text.offset(unitNames(document.unitSystem).length)}
+            value={value.offset}
+            optional
+            disabled={disabled}
+            onCommit={(offset) => change({ offset })}
+          />
+        </div>
         <Figure
           label={text.elevation(elevationUnit(document.unitSystem, document.datum))}
           value={value.elevation}

@@ -15,7 +15,9 @@ import { WaterForm } from './water-form.tsx';
 
 /** What is open in the margin in the place of the notes. */
 export type MarginForm =
-  | { form: 'loadCase' | 'setOut' | 'water' | 'permeability' | 'count' | 'point' | 'findings' }
+  | { form: 'loadCase' | 'water' | 'permeability' | 'count' | 'point' | 'findings' }
+  /** `placedId`: the known point just placed, whose offset is typed next. */
+  | { form: 'setOut'; placedId?: string }
   | { form: 'line'; lineId: string };
 
 interface MarginFormProps {
@@ -55,7 +57,7 @@ export function MarginFormPane({ open, store, detail, flush, onOpen, onClose, on
     case 'loadCase':
       return <LoadCasePane detail={detail} disabled={disabled} flush={flush} onClose={onClose} />;
     case 'setOut':
-      return <SetOutForm {...form} onPlace={() => take('knownPoint')} />;
+      return <SetOutForm {...form} placedId={open.placedId ?? null} onPlace={() => take('knownPoint')} />;
     case 'water':
       return (
         <WaterForm

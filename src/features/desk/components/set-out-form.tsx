@@ -13,9 +13,11 @@ type SetOut = EntityOf<'setOut'>;
 
 /** How the section is set out: its known points, what they mean, and how well they agree. */
 export function SetOutForm({
+  placedId,
   onPlace,
   ...form
 }: DeskFormProps & {
+  placedId: string | null;
   /** Takes up the tool that places known points. */
   onPlace: () => void;
 }) {
@@ -41,7 +43,7 @@ export function SetOutForm({
         disabled={disabled}
         onCommit={(method) => change({ method }, text.labels.method)}
       />
-      <KnownPointRows points={points} {...form} />
+      <KnownPointRows points={points} placedId={placedId} {...form} />
       {held.value.method === 'distance' ? (
         <DistanceFields {...form} setOut={held.value} change={change} />
       ) : null}
