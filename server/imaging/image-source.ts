@@ -41,8 +41,11 @@ export function refuseDecoding(error: unknown): never {
   throw refusals.damagedImage(error);
 }
 
-/** Stated resolution, when it can be true of a drawing: a scanner's 72 stands for "unknown" but does no harm. */
+/** Libvips' 72 stands for "not stated", and no drawing was ever scanned at that. */
+const NOT_STATED = 73;
+
+/** Stated resolution across, in dots per inch, when it can be true of a drawing. */
 export function statedDpi(header: Metadata): number | null {
   const { density } = header;
-  return density !== undefined && density >= 20 && density <= 4800 ? density : null;
+  return density !== undefined && density > NOT_STATED && density <= 4800 ? density : null;
 }

@@ -43,12 +43,9 @@ export interface PageScan {
  * Taken as it is a scan keeps every pixel, and needs a fraction of the time and memory of drawing it.
  */
 export async function findPageScan(file: string, pageNumber: number): Promise<PageScan | null> {
-  if ((await stat(file)).size > MAX_FILE_BYTES) return null;
   try {
-    const document = await PDFDocument.load(await readFile(file), {
-      ignoreEncryption: true,
-      updateMetadata: false,
-    });
+    const document = await openOnce(file);
+    if (!document) return null;
     if (document.isEncrypted) return null;
     const page = document.getPage(pageNumber - 1);
     const placed = hasVisibleNotes(page) ? null : placedPicture(page);
@@ -57,6 +54,23 @@ export async function findPageScan(file: string, pageNumber: number): Promise<Pa
     // What this reader cannot make out, the renderer proper decides.
     return null;
   }
+}
+
+let lastOpened: { key: string; document: PDFDocument } | null = null;
+
+/** The pages of a file are asked for one after the other; reading it again for each would take longer than drawing. */
+async function openOnce(file: string): Promise<PDFDocument | null> {
+  const { size, mtimeMs } = await stat(file);
+  const key = `${file} ${size} ${mtimeMs}`;
+  if (lastOpened?.key === key) return lastOpened.document;
+  lastOpened = null;
+  if (size > MAX_FILE_BYTES) return null;
+  const document = await PDFDocument.load(await readFile(file), {
+    ignoreEncryption: true,
+    updateMetadata: false,
+  });
+  lastOpened = { key, document };
+  return document;
 }
 
 /** Links show nothing; every other annotation may. */

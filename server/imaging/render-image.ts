@@ -1,9 +1,11 @@
 import path from 'node:path';
 import type { Metadata, Sharp } from 'sharp';
+import { MAX_PIXELS } from '#shared/contract/limits.ts';
 import { openImage, readHeader, refuseDecoding, statedDpi } from './image-source.ts';
 import { isPlainLab, openLab } from './lab-tiff.ts';
 import { refusals } from './refusal.ts';
 import type { RenderedSheet, RenderRequest, TileFormat } from './render-types.ts';
+import { pixelHeightRatio, squaredSize } from './square-pixels.ts';
 import { readTiffPages, type TiffPage } from './tiff-directory.ts';
 import { sampledFormat } from './tile-format.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
@@ -17,12 +19,21 @@ export async function renderImage(
   const directory = request.kind === 'tiff' ? (await readTiffPages(file))[pageNumber - 1] : undefined;
   if (directory && isPlainLab(directory)) return renderLab(request, directory, onProgress);
   const header = await readHeader(file, pageNumber);
-  const size = { widthPx: header.autoOrient.width, heightPx: header.autoOrient.height };
+  const stored = pixelHeightRatio(directory);
+  const ratio = liesOnItsSide(header) ? 1 / stored : stored;
+  const scanned = { widthPx: header.autoOrient.width, heightPx: header.autoOrient.height };
+  const size = squaredSize(scanned, ratio);
+  if (size.widthPx * size.heightPx > MAX_PIXELS) {
+    throw refusals.tooManyPixels(size.widthPx, size.heightPx, MAX_PIXELS);
+  }
   try {
     const format = await chooseFormat(request, header, directory);
-    const image = await toEightBit(openImage(file, pageNumber), request, header);
-    const tiles = await writeTilePyramid(upright(image, header), size, format, outFolder, onProgress);
-    return { ...size, dpi: statedDpi(header), ...tiles, note: '' };
+    const image = upright(await toEightBit(openImage(file, pageNumber), request, header), header);
+    if (ratio !== 1) image.resize({ width: size.widthPx, height: size.heightPx, fit: 'fill' });
+    const tiles = await writeTilePyramid(image, size, format, outFolder, onProgress);
+    const dpi = statedDpi(header);
+    // Stated across the page as stored; a page stretched across has the finer resolution down the page everywhere.
+    return { ...size, dpi: dpi && stored < 1 ? dpi / stored : dpi, ...tiles, note: stretchNote(ratio) };
   } catch (error) {
     return refuseDecoding(error);
   }
@@ -33,6 +44,14 @@ async function renderLab(request: RenderRequest, page: TiffPage, onProgress: (sh
   const size = { widthPx: page.widthPx, heightPx: page.heightPx };
   const tiles = await writeTilePyramid(image, size, 'jpeg', request.outFolder, onProgress);
   return { ...size, dpi: null, ...tiles, note: '' };
+}
+
+/** EXIF and TIFF orientations 5 to 8 turn the page by a quarter. */
+const liesOnItsSide = (header: Metadata) => (header.orientation ?? 1) >= 5;
+
+function stretchNote(ratio: number): string {
+  if (ratio === 1) return '';
+  return 'The scan has more dots per inch in one direction than in the other, as fax machines make them; it was stretched so that lengths are true.';
 }
 
 function upright(image: Sharp, header: Metadata): Sharp {

@@ -10,6 +10,8 @@ export interface TiffPage {
   samplesPerPixel: number;
   compression: number;
   photometric: number;
+  /** Pixels along a unit of length, across and down, in whatever unit; 0 when not stated. */
+  resolution: [number, number];
   /** File offset of the value of the photometric tag. */
   photometricAt: number | null;
 }
@@ -20,8 +22,18 @@ interface Layout {
   firstDirectory: number;
 }
 
-const TAG = { width: 256, height: 257, bits: 258, compression: 259, photometric: 262, samples: 277 };
+const TAG = {
+  width: 256,
+  height: 257,
+  bits: 258,
+  compression: 259,
+  photometric: 262,
+  samples: 277,
+  acrossRes: 282,
+  downRes: 283,
+};
 const MAX_ENTRIES = 4096;
+const RATIONAL = 5;
 
 /**
  * The pages of a TIFF in file order. A chain of directories that runs back into itself ends where it does so.
@@ -69,20 +81,40 @@ async function readDirectory(handle: FileHandle, layout: Layout, offset: number)
     if (tag === TAG.photometric) photometricAt = offset + countBytes + at + (layout.big ? 12 : 8);
   }
   const next = uint(table, count * entryBytes, pointerBytes, layout.bigEndian);
-  return { page: toPage(values, photometricAt), next };
+  const resolution: [number, number] = [
+    await rationalAt(handle, layout, values.get(TAG.acrossRes)),
+    await rationalAt(handle, layout, values.get(TAG.downRes)),
+  ];
+  return { page: { ...toPage(values), resolution, photometricAt }, next };
 }
 
-/** First value of an entry where it is stored in the entry itself; several bits-per-sample lie elsewhere (0). */
+/**
+ * First value of an entry where it is stored in the entry itself, or where a classic TIFF's rational lies; 0 for what
+ * lies elsewhere, such as several bits-per-sample.
+ */
 function firstValue(table: Buffer, at: number, { bigEndian, big }: Layout): number {
   const type = uint(table, at + 2, 2, bigEndian);
   const valueAt = at + (big ? 12 : 8);
   const count = uint(table, at + 4, big ? 8 : 4, bigEndian);
   const size = type === 3 ? 2 : type === 4 ? 4 : type === 1 ? 1 : 0;
+  if (type === RATIONAL && !big) return uint(table, valueAt, 4, bigEndian);
   if (size === 0 || count * size > (big ? 8 : 4)) return 0;
   return uint(table, valueAt, size, bigEndian);
 }
 
-function toPage(values: Map<number, number>, photometricAt: number | null): TiffPage {
+/** A rational (numerator, denominator), which a classic TIFF keeps elsewhere and a BigTIFF in the entry: then 0. */
+async function rationalAt(
+  handle: FileHandle,
+  { bigEndian }: Layout,
+  offset: number | undefined,
+): Promise<number> {
+  if (!offset) return 0;
+  const bytes = await readAt(handle, offset, 8).catch(() => Buffer.alloc(8));
+  const denominator = uint(bytes, 4, 4, bigEndian);
+  return denominator === 0 ? 0 : uint(bytes, 0, 4, bigEndian) / denominator;
+}
+
+function toPage(values: Map<number, number>): Omit<TiffPage, 'resolution' | 'photometricAt'> {
   return {
     widthPx: values.get(TAG.width) ?? 0,
     heightPx: values.get(TAG.height) ?? 0,
@@ -91,7 +123,6 @@ function toPage(values: Map<number, number>, photometricAt: number | null): Tiff
     samplesPerPixel: values.get(TAG.samples) ?? 1,
     compression: values.get(TAG.compression) ?? 1,
     photometric: values.get(TAG.photometric) ?? -1,
-    photometricAt,
   };
 }
 
