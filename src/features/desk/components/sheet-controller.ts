@@ -4,8 +4,9 @@ import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
-import { balloonCentre, buildScene, type NoteBalloon } from '../render/build-scene.ts';
+import { buildScene, type NoteBalloon, noteIdOf } from '../render/build-scene.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
+import type { SceneItem } from '../render/scene.ts';
 import { createSheetRenderer, type SheetRenderer } from '../render/sheet-renderer.ts';
 import { createToolHost, type HostView, type ToolHost } from '../tools/tool-host.ts';
 import type { Balloon, Modifiers } from '../tools/tool-types.ts';
@@ -44,29 +45,28 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let pointer: { at: SheetPx; keys: Modifiers; view: HostView } | null = null;
   let overlay: ToolOverlay = NO_OVERLAY;
   let sceneDue = false;
+  let scene: readonly SceneItem[] = [];
 
   const zoom = () => views.getState().view.zoom;
-  const balloons = (): Balloon[] =>
-    options.notes().map((note) => ({ id: note.id, at: sheetPx(...balloonCentre(note, zoom())) }));
+  const balloons = (): Balloon[] => balloonsOf(scene, zoom());
   const keyView = (): HostView => ({ zoom: zoom(), reachPx: KEYBOARD_REACH_PX, balloons: balloons() });
 
   function showScene(): void {
     sceneDue = false;
     const state = store.getState();
-    renderer.showBase(
-      buildScene({
-        document: state.document,
-        preview: state.preview,
-        reading: state.reading,
-        selection: state.selection,
-        draftId: state.draft?.lineId ?? null,
-        hiddenKinds: state.hiddenKinds,
-        notes: options.notes(),
-        map: host.map(),
-        readOnly: state.readOnly,
-        zoom: zoom(),
-      }),
-    );
+    scene = buildScene({
+      document: state.document,
+      preview: state.preview,
+      reading: state.reading,
+      selection: state.selection,
+      draftId: state.draft?.lineId ?? null,
+      hiddenKinds: state.hiddenKinds,
+      notes: options.notes(),
+      map: host.map(),
+      readOnly: state.readOnly,
+      zoom: zoom(),
+    });
+    renderer.showBase(scene);
     showOverlay();
   }
 
@@ -139,6 +139,15 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       renderer.destroy();
     },
   };
+}
+
+/** Where the notes' balloons stand in a scene, to be met there by the pointer. */
+function balloonsOf(scene: readonly SceneItem[], zoom: number): Balloon[] {
+  return scene.flatMap((item) => {
+    if (item.shape !== 'balloon') return [];
+    const [dx, dy] = item.offsetPx;
+    return [{ id: noteIdOf(item.id), at: sheetPx(item.at[0] + dx / zoom, item.at[1] + dy / zoom) }];
+  });
 }
 
 /** True when something that is drawn has changed; the pointer alone does not count. */

@@ -5,8 +5,8 @@ import type { NetReading } from '#shared/contract/reading.ts';
 import { fixedText, plainText } from '#shared/text/number-text.ts';
 import type { HideableKind } from '../model/desk-state.ts';
 import type { Selection } from '../model/selection.ts';
-import { placeLabels } from './label-layout.ts';
 import { COLOURS, lookOf, unfinishedLook } from './line-look.ts';
+import { placeWords } from './place-words.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
 
 /** A note as the sheet shows it. */
@@ -32,16 +32,16 @@ export type SceneInput = {
 };
 
 type Shown = { readonly id: string; readonly value: DocumentEntity };
+/** Ids of balloons in the scene are those of their notes with this before them. */
+const NOTE_PREFIX = 'note ';
 const NO_OFFSET = [0, 0] as const;
-/** From the place of a note to the middle of its balloon. */
-const BALLOON_OFFSET_PX = [-22, 18] as const;
 
 /** Everything the sheet shows over the scan, from the bottom up: lines, labels, points, handles, notes. */
 export function buildScene(input: SceneInput): SceneItem[] {
   const shown = shownEntities(input);
   const lines = shown.flatMap((entity) => lineItem(entity, input));
   lines.sort((a, b) => Number(a.strong) - Number(b.strong));
-  return [
+  const items = [
     ...lines,
     ...labelItems(lines, input),
     ...shown.flatMap((entity) => pointItem(entity, input)),
@@ -49,6 +49,7 @@ export function buildScene(input: SceneInput): SceneItem[] {
     ...doubtItems(input),
     ...noteItems(input),
   ];
+  return placeWords(items, input.zoom);
 }
 
 function shownEntities(input: SceneInput): Shown[] {
@@ -75,29 +76,21 @@ function mark(
   shape: MarkShape,
   at: SheetPoint,
   colour: string,
-  rest: Partial<Pick<SceneMark, 'text' | 'strong' | 'offsetPx'>> = {},
+  rest: Partial<Pick<SceneMark, 'text' | 'strong'>> = {},
 ): SceneMark {
   return { id, shape, at, colour, text: '', strong: false, offsetPx: NO_OFFSET, ...rest };
 }
 
-/** Heads at the lower ends of the equipotentials, beside one another rather than over one another. */
+/** Heads at the lower ends of the equipotentials. */
 function labelItems(lines: readonly SceneLine[], input: SceneInput): SceneMark[] {
-  const ends = new Map<string, SheetPoint>();
-  const labels = lines.flatMap((line) => {
+  return lines.flatMap((line) => {
     const text = headText(line.id, input);
     if (text === null) return [];
-    const end = lowerEnd(line.points);
-    ends.set(line.id, end);
-    return [{ id: line.id, x: end[0] * input.zoom, y: end[1] * input.zoom, text, strong: line.strong }];
+    const { strong } = line;
+    return [
+      mark(`label ${line.id}`, 'label', lowerEnd(line.points), COLOURS.equipotential, { text, strong }),
+    ];
   });
-  const offsets = placeLabels(labels);
-  return labels.map(({ id, text, strong }) =>
-    mark(`label ${id}`, 'label', ends.get(id)!, COLOURS.equipotential, {
-      text,
-      strong,
-      offsetPx: offsets.get(id)!,
-    }),
-  );
 }
 
 function lowerEnd(points: readonly SheetPoint[]): SheetPoint {
@@ -161,15 +154,14 @@ function doubtItems(input: SceneInput): SceneMark[] {
 function noteItems(input: SceneInput): SceneMark[] {
   if (input.hiddenKinds.includes('note')) return [];
   return input.notes.map((note) =>
-    mark(`note ${note.id}`, 'balloon', note.at, COLOURS.ink, {
+    mark(`${NOTE_PREFIX}${note.id}`, 'balloon', note.at, COLOURS.ink, {
       text: String(note.number),
       strong: note.chosen,
-      offsetPx: BALLOON_OFFSET_PX,
     }),
   );
 }
 
-/** Where the middle of a note's balloon lies, to be met there by the pointer. */
-export function balloonCentre(note: NoteBalloon, zoom: number): SheetPoint {
-  return [note.at[0] + BALLOON_OFFSET_PX[0] / zoom, note.at[1] + BALLOON_OFFSET_PX[1] / zoom];
+/** The note whose balloon an item of the scene is. */
+export function noteIdOf(itemId: string): string {
+  return itemId.slice(NOTE_PREFIX.length);
 }

@@ -1,65 +1,79 @@
-/** A label at a line's end, in screen pixels of the whole sheet at the present zoom. */
-export type LabelPlace = {
+/**
+ * Something with words that has to stand apart from the others: its place and the size of its box in screen pixels of
+ * the whole sheet at the present zoom, and the distances from its place to the middle of the box that may be tried,
+ * the best first.
+ */
+export type Placeable = {
   readonly id: string;
   readonly x: number;
   readonly y: number;
-  readonly text: string;
+  readonly widthPx: number;
+  readonly heightPx: number;
+  readonly offsets: ReadonlyArray<readonly [number, number]>;
+};
+
+export type Rect = {
+  readonly left: number;
+  readonly top: number;
+  readonly right: number;
+  readonly bottom: number;
 };
 
 export const LABEL_HEIGHT_PX = 17;
 const CHARACTER_PX = 6.7;
 const PADDING_PX = 10;
-const GAP_PX = 3;
-/** Distances from the line's end that are tried in turn: just below, then in rows below, then above. */
+const GAP_PX = 1.5;
+/** Distances from a line's end that are tried in turn: just below, then in rows below, then above. */
 const ROWS_PX = [16, 36, 56, 76, -16, -36, 96, 116];
 /** Steps to the side that are tried in each row. */
 const SHIFTS_PX = [0, 24, -24];
 
-type Rect = { left: number; top: number; right: number; bottom: number };
+/** Offsets of a head's label from the end of its line. */
+export const LABEL_OFFSETS = ROWS_PX.flatMap((row) => SHIFTS_PX.map((shift) => [shift, row] as const));
 
 /** Width of a label's box. Figures are tabular, so the count of characters tells it. */
 export function labelWidthPx(text: string): number {
   return Math.max(24, text.length * CHARACTER_PX + PADDING_PX);
 }
 
+/** The space a thing of some size takes about a place. */
+export function rectAbout(x: number, y: number, widthPx: number, heightPx: number): Rect {
+  const half = widthPx / 2 + GAP_PX;
+  const tall = heightPx / 2 + GAP_PX;
+  return { left: x - half, right: x + half, top: y - tall, bottom: y + tall };
+}
+
 /**
- * Where each label goes, as a distance from its line's end: the nearest place at which it covers no other label.
- * Labels are placed from left to right, so that the same lines get the same places whatever order they were drawn in.
+ * Where each thing goes, as one of its offsets: the first at which it covers nothing that is taken, which is then
+ * taken too (`taken` grows). Where none is free it goes to its first. Things are placed from left to right, so that
+ * the same things get the same places whatever order they were made in.
  */
-export function placeLabels(labels: readonly LabelPlace[]): Map<string, readonly [number, number]> {
-  const placed: Rect[] = [];
-  const offsets = new Map<string, readonly [number, number]>();
-  const ordered = [...labels].sort((a, b) => a.x - b.x || a.y - b.y || (a.id < b.id ? -1 : 1));
-  for (const label of ordered) {
-    const offset = freeOffset(label, placed);
-    placed.push(rectOf(label, offset));
-    offsets.set(label.id, offset);
+export function placeApart(
+  things: readonly Placeable[],
+  taken: Rect[],
+): Map<string, readonly [number, number]> {
+  const chosen = new Map<string, readonly [number, number]>();
+  const ordered = [...things].sort((a, b) => a.x - b.x || a.y - b.y || (a.id < b.id ? -1 : 1));
+  for (const thing of ordered) {
+    const offset =
+      thing.offsets.find((candidate) => isFree(boxOf(thing, candidate), taken)) ?? thing.offsets[0];
+    if (offset === undefined) continue;
+    taken.push(boxOf(thing, offset));
+    chosen.set(thing.id, offset);
   }
-  return offsets;
+  return chosen;
 }
 
-function freeOffset(label: LabelPlace, placed: readonly Rect[]): readonly [number, number] {
-  for (const row of ROWS_PX) {
-    for (const shift of SHIFTS_PX) {
-      const offset = [shift, row] as const;
-      const rect = rectOf(label, offset);
-      if (!placed.some((other) => overlap(rect, other))) return offset;
-    }
-  }
-  return [0, ROWS_PX[0]!];
+function boxOf(thing: Placeable, [dx, dy]: readonly [number, number]): Rect {
+  return rectAbout(thing.x + dx, thing.y + dy, thing.widthPx, thing.heightPx);
 }
 
-function rectOf(label: LabelPlace, [dx, dy]: readonly [number, number]): Rect {
-  const half = labelWidthPx(label.text) / 2 + GAP_PX / 2;
-  const tall = LABEL_HEIGHT_PX / 2 + GAP_PX / 2;
-  return {
-    left: label.x + dx - half,
-    right: label.x + dx + half,
-    top: label.y + dy - tall,
-    bottom: label.y + dy + tall,
-  };
-}
-
-function overlap(a: Rect, b: Rect): boolean {
-  return a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom;
+function isFree(rect: Rect, taken: readonly Rect[]): boolean {
+  return !taken.some(
+    (other) =>
+      rect.left < other.right &&
+      other.left < rect.right &&
+      rect.top < other.bottom &&
+      other.top < rect.bottom,
+  );
 }

@@ -53,7 +53,7 @@ const knownPoint: Painter = (context, mark) => {
   circle(context, 5);
   haloStroke(context, mark, mark.strong ? 2.2 : 1.4);
   context.font = `600 12px ${FONT}`;
-  haloText(context, mark.text, 0, 19, mark.colour);
+  haloText(context, mark.text, mark.offsetPx[0], mark.offsetPx[1], mark.colour);
 };
 
 const readingPoint: Painter = (context, mark) => {
@@ -71,8 +71,7 @@ const readingPoint: Painter = (context, mark) => {
   context.fillStyle = mark.colour;
   context.fill();
   context.font = `700 13px ${FONT}`;
-  context.textAlign = 'left';
-  haloText(context, mark.text, 10, -12, mark.colour);
+  haloText(context, mark.text, mark.offsetPx[0], mark.offsetPx[1], mark.colour);
 };
 
 const label: Painter = (context, mark) => {

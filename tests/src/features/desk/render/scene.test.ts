@@ -1,7 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { buildScene, type SceneInput } from '#client/features/desk/render/build-scene.ts';
-import { LABEL_HEIGHT_PX, labelWidthPx, placeLabels } from '#client/features/desk/render/label-layout.ts';
-import { diffScene, type SceneItem, type SceneSink } from '#client/features/desk/render/scene.ts';
+import { LABEL_HEIGHT_PX, labelWidthPx } from '#client/features/desk/render/label-layout.ts';
+import { placeWords } from '#client/features/desk/render/place-words.ts';
+import {
+  diffScene,
+  type SceneItem,
+  type SceneMark,
+  type SceneSink,
+} from '#client/features/desk/render/scene.ts';
 import { documentWith, LINE_A, LINE_B, POINT_A, tracedLine } from '#tests/support/desk/desk-fixture.ts';
 
 const line = tracedLine([
@@ -133,32 +139,50 @@ describe('the scene', () => {
   });
 });
 
-describe('labels at line ends', () => {
-  it('stand below their ends and cover no other label', () => {
-    const labels = Array.from({ length: 9 }, (_unused, i) => ({
-      id: `${i}`,
-      x: 500 + 18 * i,
-      y: 400,
-      text: '112.00',
-    }));
-    const offsets = placeLabels(labels);
-    const boxes = labels.map(({ id, x, y }) => {
-      const [dx, dy] = offsets.get(id)!;
-      return { x: x + dx, y: y + dy };
+describe('words on the sheet', () => {
+  const label = (id: string, x: number, text = '112.00'): SceneMark => ({
+    id,
+    shape: 'label',
+    at: [x, 400],
+    text,
+    colour: '',
+    strong: false,
+    offsetPx: [0, 0],
+  });
+  const offsetOf = (items: readonly SceneItem[], id: string) => {
+    const item = items.find((each) => each.id === id);
+    return item === undefined || item.shape === 'line' ? undefined : item.offsetPx;
+  };
+
+  it('stand below their lines and cover no other label', () => {
+    const items = placeWords(
+      Array.from({ length: 9 }, (_unused, i) => label(`${i}`, 500 + 18 * i)),
+      1,
+    );
+    expect(offsetOf(items, '0')).toEqual([0, 16]);
+    const boxes = items.map((item) => {
+      const [dx, dy] = offsetOf(items, item.id) ?? [0, 0];
+      return item.shape === 'line' ? { x: 0, y: 0 } : { x: item.at[0] + dx, y: item.at[1] + dy };
     });
-    expect(offsets.get('0')).toEqual([0, 16]);
     for (let i = 0; i < boxes.length; i += 1) {
       for (let j = 0; j < i; j += 1) {
-        const apart =
-          Math.abs(boxes[i]!.x - boxes[j]!.x) >= labelWidthPx('112.00') ||
-          Math.abs(boxes[i]!.y - boxes[j]!.y) >= LABEL_HEIGHT_PX;
-        expect(apart).toBe(true);
+        const wide = Math.abs(boxes[i]!.x - boxes[j]!.x) >= labelWidthPx('112.00');
+        const tall = Math.abs(boxes[i]!.y - boxes[j]!.y) >= LABEL_HEIGHT_PX;
+        expect(wide || tall).toBe(true);
       }
     }
   });
 
+  it('give way to points, their names and the notes', () => {
+    const point: SceneItem = { ...label('P3', 500, 'P3'), shape: 'readingPoint', at: [500, 416] };
+    const items = placeWords([label('head', 500), point], 1);
+    expect(offsetOf(items, 'head')).not.toEqual([0, 16]);
+  });
+
   it('stand in the same places whatever order the lines were drawn in', () => {
-    const labels = [3, 1, 2].map((i) => ({ id: `${i}`, x: 100 + i * 10, y: 0, text: '110' }));
-    expect(placeLabels(labels)).toEqual(placeLabels([...labels].reverse()));
+    const labels = [3, 1, 2].map((i) => label(`${i}`, 100 + i * 10, '110'));
+    const one = placeWords(labels, 1);
+    const other = placeWords([...labels].reverse(), 1);
+    for (const { id } of labels) expect(offsetOf(one, id)).toEqual(offsetOf(other, id));
   });
 });
