@@ -6,6 +6,8 @@ export const problemText = {
   unknownReply:
     'The server answered in a way this page does not know. Reload the page; if it happens again, tell the administrator.',
   unreadableReply: 'The server could not do this. Try again; if it happens again, tell the administrator.',
+  missingScript:
+    'The script of this page could not be fetched: the product was renewed meanwhile, or there is no connection. Reload the page.',
   requestNumber: 'Request number',
   pageFailedTitle: 'This page could not be shown',
   pageFailed:

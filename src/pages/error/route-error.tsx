@@ -21,8 +21,14 @@ export function RouteError() {
     return <Failed title={sessionText.linkInvalid} detail={error.message} error={error} retry={retry} />;
   if (error instanceof ApiProblem)
     return <Failed title={error.problem.title} detail={error.message} error={error} retry={retry} />;
+  if (isMissingScript(error))
+    return <Failed title={text.unknownReplyTitle} detail={text.missingScript} error={error} />;
   return <Failed title={text.pageFailedTitle} detail={text.pageFailed} error={error} />;
 }
+
+/** The page's script could not be fetched: the server holds a newer client, or there is no connection. */
+const isMissingScript = (error: unknown) =>
+  error instanceof TypeError && /dynamically imported module|module script/i.test(error.message);
 
 const isNotFound = (error: unknown) =>
   error instanceof ApiProblem
