@@ -9,11 +9,11 @@ export async function signIn(page: Page, person: TestPerson): Promise<void> {
   await page.getByRole('button', { name: 'Sign in' }).click();
 }
 
-/** A section drawn in code, as a scan would show it: an embankment on a flat base. */
+/** A section drawn in code, as a scan would show it: an embankment on a flat base, another for each title. */
 export function scanOfSection(title: string): Promise<Buffer> {
-  const lines = `<svg width="1500" height="800"><title>${title}</title>
-    <path d="M100 650H1400M200 650L650 250H750L1250 650" stroke="#333" stroke-width="4" fill="none"/>
-    <path d="M100 ${100 + title.length * 10}H400" stroke="#333" stroke-width="2"/></svg>`;
+  const marks = [...title].map((letter, at) => `M${100 + at * 20} 100V${100 + (letter.codePointAt(0) ?? 0)}`);
+  const lines = `<svg width="1500" height="800"><g stroke="#333" stroke-width="4" fill="none">
+    <path d="M100 650H1400M200 650L650 250H750L1250 650"/><path d="${marks.join('')}"/></g></svg>`;
   return sharp({ create: { width: 1500, height: 800, channels: 3, background: '#efe9d8' } })
     .composite([{ input: Buffer.from(lines) }])
     .jpeg()
