@@ -124,7 +124,7 @@ export const countText = {
 } as const;
 
 export const lineText = {
-  title: 'Line',
+  properties: 'Properties',
   kind: 'Kind',
   kinds: {
     equipotential: 'Equipotential',

@@ -3,6 +3,7 @@ import { useState } from 'react';
 import { Button } from '#client/components/button.tsx';
 import { useNotice } from '#client/components/notice.tsx';
 import { netQuery } from '#client/features/desk/api/net-queries.ts';
+import { ChosenLineBar } from '#client/features/desk/components/chosen-line-bar.tsx';
 import { ConflictDialog } from '#client/features/desk/components/conflict-dialog.tsx';
 import { MarginFormPane } from '#client/features/desk/components/margin-form.tsx';
 import { ReadOnlyLine } from '#client/features/desk/components/read-only-line.tsx';
@@ -101,6 +102,12 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             <>
               {readOnly ? <ReadOnlyLine reason={readOnly} onTakeOver={takeOver} /> : null}
               <StoreNotice store={store} />
+              {narrow && pane === 'sheet' ? (
+                <ChosenLineBar
+                  store={store}
+                  onOpen={(lineId) => show({ shows: 'form', form: { form: 'line', lineId } })}
+                />
+              ) : null}
             </>
           }
           sheet={

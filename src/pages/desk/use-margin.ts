@@ -1,6 +1,6 @@
 import { useEffect, useState } from 'react';
 import type { MarginForm } from '#client/features/desk/components/margin-form.tsx';
-import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
+import type { DeskState, DeskStore } from '#client/features/desk/model/desk-state.ts';
 import type { NoteAnchor } from '#shared/contract/notes.ts';
 import type { DeskPane } from './desk-grid.tsx';
 
@@ -11,7 +11,11 @@ export const NOTES: Margin = { shows: 'notes' };
 export function useMargin(
   store: DeskStore,
   narrow: boolean,
-  notes: { setWritingAt: (anchor: NoteAnchor) => void; setChosenId: (id: string) => void },
+  notes: {
+    writingAt: NoteAnchor | null;
+    setWritingAt: (anchor: NoteAnchor) => void;
+    setChosenId: (id: string) => void;
+  },
 ) {
   const [margin, setMargin] = useState<Margin>(NOTES);
   const [pane, setPane] = useState<DeskPane>('sheet');
@@ -57,15 +61,16 @@ export function useMargin(
     [store, setWritingAt, setChosenId],
   );
 
-  // Placing known points goes with typing what they mean; on a narrow screen the form would hide the sheet.
+  // What goes with the tool or the line in hand stands beside the sheet; on a narrow screen it would hide the sheet.
+  const writing = notes.writingAt !== null;
   useEffect(() => {
-    if (narrow) return;
+    if (narrow || writing) return;
     return store.subscribe((state, before) => {
-      if (state.tool === 'knownPoint' && before.tool !== 'knownPoint') {
-        setMargin({ shows: 'form', form: { form: 'setOut' } });
-      }
+      const form = formFor(state, before);
+      if (form) setMargin({ shows: 'form', form });
+      else if (chosenLine(state) === null && chosenLine(before) !== null) setMargin(withoutLine);
     });
-  }, [store, narrow]);
+  }, [store, narrow, writing]);
 
   // A line that goes takes its form with it.
   const lineId = margin.shows === 'form' && margin.form.form === 'line' ? margin.form.lineId : null;
@@ -78,3 +83,18 @@ export function useMargin(
 
   return { margin, pane, setPane, show, close: () => setMargin(NOTES) };
 }
+
+/** The form that a change of tool or of selection asks for; null when it asks for none. */
+function formFor(state: DeskState, before: DeskState): MarginForm | null {
+  if (state.tool === 'knownPoint' && before.tool !== 'knownPoint') return { form: 'setOut' };
+  const lineId = chosenLine(state);
+  return lineId !== null && lineId !== chosenLine(before) ? { form: 'line', lineId } : null;
+}
+
+function chosenLine({ selection }: DeskState): string | null {
+  return selection.kind === 'line' && selection.ids.length === 1 ? (selection.ids[0] ?? null) : null;
+}
+
+/** A line no longer chosen gives its place in the margin back to the notes; other forms stay. */
+const withoutLine = (margin: Margin): Margin =>
+  margin.shows === 'form' && margin.form.form === 'line' ? NOTES : margin;
