@@ -19,6 +19,7 @@ export async function openLiveStream(
   req: Request,
   res: Response,
   actor: Actor,
+  heartbeatMs = HEARTBEAT_MS,
 ): Promise<void> {
   const sid = req.sessionID;
   const load = () => loadLiveAccess(deps.db.manager, actor.id, sid);
@@ -59,7 +60,7 @@ export async function openLiveStream(
   const heartbeat = setInterval(() => {
     if (res.writable) res.write(': still here\n\n');
     inTurn(lookAgain);
-  }, HEARTBEAT_MS);
+  }, heartbeatMs);
   res.on('close', () => {
     clearInterval(heartbeat);
     unsubscribe();

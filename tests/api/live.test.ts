@@ -1,5 +1,14 @@
+import { once } from 'node:events';
+import type { AddressInfo } from 'node:net';
+import { setTimeout as delay } from 'node:timers/promises';
+import express from 'express';
 import { pino } from 'pino';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { openLiveStream } from '#server/http/live-stream.ts';
+import { mountRoutes } from '#server/http/mount-routes.ts';
+import { defineRoute } from '#server/http/route-record.ts';
+import { createSessionMiddleware } from '#server/http/session.ts';
+import { configurePassport } from '#server/http/sign-in-strategy.ts';
 import { createPgLive } from '#server/live/pg-live.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { type LiveReader, openLiveReader } from '#tests/support/live-reader.ts';
@@ -117,4 +126,41 @@ describe('the live stream', () => {
       WHERE application_name = 'tracehead-live' AND datname = current_database()`);
     await reader.until(() => reader.heard.filter((event) => event.type === 'hello').length === 2);
   });
+
+  it('ends at the next heartbeat when the session has run out meanwhile', async () => {
+    const { caller, person } = await member('colleague');
+    const quick = await startWithHeartbeat(100);
+    const reader = await openLiveReader(quick.address, caller.cookieHeader());
+    await reader.until(() => reader.heard.length > 0);
+    await delay(300);
+    expect(reader.isEnded()).toBe(false);
+    await app.db.query(
+      `UPDATE session SET expire = now() - interval '1 second' WHERE sess -> 'passport' ->> 'user' = $1`,
+      [person.id],
+    );
+    await reader.until(() => reader.isEnded());
+    await quick.close();
+  });
 });
+
+/** The same stream on the same sessions, with a quicker pulse. */
+async function startWithHeartbeat(heartbeatMs: number) {
+  const route = defineRoute({
+    method: 'get',
+    path: '/api/v1/live',
+    access: { who: 'signedIn' },
+    handle: ({ deps, req, res, actor }) => openLiveStream(deps, req, res, actor, heartbeatMs),
+  });
+  const { deps } = app;
+  const quick = express().use(
+    createSessionMiddleware(deps),
+    configurePassport(deps).session(),
+    mountRoutes([route], deps),
+  );
+  const server = quick.listen(0, '127.0.0.1');
+  await once(server, 'listening');
+  return {
+    address: `http://127.0.0.1:${(server.address() as AddressInfo).port}`,
+    close: () => new Promise((resolve) => server.close(resolve)),
+  };
+}
