@@ -12,7 +12,7 @@ import { checkPortFree, DEFAULT_HOST, wantedPort } from './ports.mjs';
 
 /** For contributors: the server starts again at each change of its sources, and Vite serves the pages. */
 const storageDir = storageDirOf(process.env);
-const DEV_PORT = 5180;
+const DEV_PORT = Number(process.env.DEV_PORT || 5180);
 
 await live(storageDir, async (life) => {
   checkNode(process.versions.node);
@@ -47,8 +47,9 @@ await live(storageDir, async (life) => {
   life.atEnd(vite.stop);
   claim.setAddress(pages);
   say(`The pages are at ${pages}, the server is at http://${host}:${port}. Ctrl-C stops both.`);
-  await Promise.race([life.asked, server.ended, vite.ended]);
-  return 0;
+  const ended = await Promise.race([life.asked, server.ended, vite.ended]);
+  // Asked to end, all is well; a program that ended by itself has said why.
+  return ended === 'asked' ? 0 : 1;
 });
 
 /** In a process group of its own, so that Ctrl-C leaves the order of stopping to this script. @param {string[]} args @param {NodeJS.ProcessEnv} env */
