@@ -67,12 +67,12 @@ function zoomKey(key: string, views: ViewStore): boolean {
 }
 
 /** Keys anywhere on the desk but in a field: tools by their letters, undo and redo. True when the key was used. */
-export function deskKey(event: KeyboardEvent, target: Pick<KeyTarget, 'store' | 'host'>): boolean {
+export function deskKey(event: KeyboardEvent, target: Pick<KeyTarget, 'store'>): boolean {
   const key = event.key.toLowerCase();
   if (event.ctrlKey || event.metaKey) {
     if (event.altKey || (key !== 'z' && key !== 'y')) return false;
-    if (key === 'y' || event.shiftKey) target.host.redo();
-    else target.host.undo();
+    if (key === 'y' || event.shiftKey) target.store.redo();
+    else target.store.undo();
     return true;
   }
   if (event.altKey || event.shiftKey) return false;

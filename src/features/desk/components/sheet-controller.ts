@@ -97,8 +97,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     if (event.defaultPrevented || isTyping(event.target)) return;
     const inSheet = event.target === element;
     const used =
-      (inSheet && sheetKey(event, { store, views, host, hostView: keyView })) ||
-      deskKey(event, { store, host });
+      (inSheet && sheetKey(event, { store, views, host, hostView: keyView })) || deskKey(event, { store });
     if (used) event.preventDefault();
   }
 

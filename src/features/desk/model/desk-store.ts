@@ -23,6 +23,7 @@ import {
   withStep,
 } from './history.ts';
 import type { DeskIntent } from './intents.ts';
+import { reopenedLine } from './reopened-line.ts';
 import { NO_SELECTION, prunedSelection } from './selection.ts';
 import {
   acknowledgeOutcomes,
@@ -141,12 +142,18 @@ export function createDeskStore(
       publish(shared);
       return refuse(text.changedSince(step.label));
     }
+    const before = shared.document;
     const label = from === 'done' ? text.undone(step.label) : text.redone(step.label);
     const back = applyAsCommand(label, step.inverse, true);
     const other = from === 'done' ? 'undone' : 'done';
     const moved = back === null ? history[other] : [...history[other], { ...back, label: step.label }];
     history = { ...history, [from]: remaining, [other]: moved };
-    publish(shared, { notice: null });
+    const { draft, tool } = store.getState();
+    const reopened = draft === null ? reopenedLine(before, shared.document, tool) : null;
+    publish(shared, {
+      notice: null,
+      draft: reopened === null ? draft : { lineId: reopened, atStart: false },
+    });
     return ACCEPTED;
   }
 

@@ -24,7 +24,7 @@ const CHARACTER_PX = 6.7;
 const PADDING_PX = 10;
 const GAP_PX = 1.5;
 /** Distances from a line's end that are tried in turn: just below, then in rows below, then above. */
-const ROWS_PX = [16, 36, 56, 76, -16, -36, 96, 116];
+const ROWS_PX = [16, 36, 56, 76, 96, -16, -36, 116];
 /** Steps to the side that are tried in each row. */
 const SHIFTS_PX = [0, 24, -24];
 

@@ -9,14 +9,14 @@ import {
 } from './label-layout.ts';
 import type { SceneItem, SceneMark } from './scene.ts';
 
-const POINT_SIZE_PX = 18;
+const POINT_SIZE_PX = 16;
 const NAME_HEIGHT_PX = 15;
 const NAME_CHARACTER_PX = 8;
 const BALLOON_SIZE_PX = 22;
 const BALLOON_REACH_PX = 28;
 
 /** Directions a balloon may stand in from its place, the best first. */
-const BALLOON_OFFSETS = [145, 215, 35, 325, 180, 90, 0, 270].map((degrees) => {
+const BALLOON_OFFSETS = [215, 325, 180, 0, 145, 35, 270, 90].map((degrees) => {
   const angle = (degrees * Math.PI) / 180;
   return [
     Math.round(BALLOON_REACH_PX * Math.cos(angle)),
@@ -76,7 +76,7 @@ function belowFirst(width: number): ReadonlyArray<readonly [number, number]> {
 }
 
 function besideFirst(width: number): ReadonlyArray<readonly [number, number]> {
-  const side = width / 2 + 9;
+  const side = width / 2 + 11;
   return [
     [side, -11],
     [-side, -11],

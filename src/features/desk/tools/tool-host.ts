@@ -2,8 +2,8 @@ import type { SheetPx } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
-import type { DeskState, DeskStore } from '../model/desk-state.ts';
-import { lineChoiceOf, toolForLine } from '../model/tool-choice.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+import { lineChoiceOf } from '../model/tool-choice.ts';
 import type { ToolOverlay } from '../model/tool-overlay.ts';
 import { overlayOf, stepTool } from './tool-set.ts';
 import {
@@ -25,8 +25,6 @@ export type ToolHost = {
   overlay(at: SheetPx | null, keys: Modifiers, view: HostView): ToolOverlay;
   /** True while the tool keeps the pointer, so that the sheet must not be panned by it. */
   grabs(): boolean;
-  undo(): void;
-  redo(): void;
   /** The set-out section of the document as it is now; null before it is set out. */
   map(): SectionMap | null;
 };
@@ -60,8 +58,6 @@ export function createToolHost(store: DeskStore): ToolHost {
     },
     overlay: (at, keys, view) => overlayOf(state, at, keys, contextFor(view)),
     grabs: () => isGrabbing(state),
-    undo: () => stepBack(store, () => store.undo()),
-    redo: () => stepBack(store, () => store.redo()),
     map: () => mapOf(store.getState().document),
   };
 }
@@ -87,24 +83,6 @@ function perform(store: DeskStore, command: ToolCommand): void {
       store.emitIntent(command.intent);
       break;
   }
-}
-
-/** Takes a step back or forward; a line that becomes unfinished by it can be gone on with at once. */
-function stepBack(store: DeskStore, step: () => unknown): void {
-  const before = store.getState();
-  step();
-  const after = store.getState();
-  const line = reopenedLine(before, after);
-  if (line !== null) store.setDraft({ lineId: line, atStart: false });
-}
-
-function reopenedLine(before: DeskState, after: DeskState): string | null {
-  if (after.draft !== null || before.document === after.document) return null;
-  for (const [id, { value }] of Object.entries(after.document.entities)) {
-    if (value.kind !== 'line' || value.finished || before.document.entities[id]?.value === value) continue;
-    if (toolForLine(value).tool === after.tool) return id;
-  }
-  return null;
 }
 
 /** The section's map, worked out again only when the known points or the way of setting out have changed. */

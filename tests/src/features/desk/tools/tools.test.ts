@@ -131,7 +131,7 @@ describe('tracing', () => {
     hand.click(100, 100);
     hand.click(110, 200);
     hand.key('finish');
-    hand.host.undo();
+    hand.store.undo();
     hand.click(120, 300);
     expect(hand.lines()).toMatchObject([
       {
@@ -233,7 +233,7 @@ describe('choosing and changing', () => {
     hand.drag([201, 100], [221, 140]);
     expect(hand.line(LINE_A).points[1]).toEqual([220, 140]);
     expect(hand.store.getState().preview).toEqual({});
-    hand.host.undo();
+    hand.store.undo();
     expect(hand.line(LINE_A).points).toEqual(line.points);
     expect(hand.store.getState().history.undoLabel).toBeNull();
   });
@@ -279,7 +279,7 @@ describe('choosing and changing', () => {
     hand.click(100, 100);
     hand.key('remove');
     expect(hand.lines()).toEqual([]);
-    hand.host.undo();
+    hand.store.undo();
     expect(hand.lines()).toHaveLength(1);
   });
 
