@@ -208,6 +208,15 @@ describe('the job that makes sheets', () => {
     expect((await drawing(drawingId)).sheets).toEqual([]);
   });
 
+  it('waits when the disk is nearly full, before it writes tiles', async () => {
+    const { drawingId, jobId } = await uploaded(await pngDrawing({ seed: 6 }));
+    const config = { ...app.deps.config, minFreeBytes: Number.MAX_SAFE_INTEGER };
+    await createRenderDrawingHandler({ ...app.deps, config })(jobId, never);
+    expect((await drawing(drawingId)).job.state).toBe('waiting');
+    await render(jobId, never);
+    expect((await drawing(drawingId)).job.state).toBe('done');
+  });
+
   it('gives up a file that ended the whole server three times', async () => {
     const { drawingId, jobId } = await uploaded(await pngDrawing({ seed: 5 }));
     const dead = { state: 'running', attempts: 3, leaseUntil: new Date(0) } as const;

@@ -172,6 +172,22 @@ describe('an upload', () => {
     expect(incoming()).toEqual([]);
   });
 
+  it('that turns out longer than a file may be is refused and leaves nothing', async () => {
+    const { caller, address } = await someoneOnDam('engineer');
+    const before = originals().length;
+    const request = startUpload(await cookieOf(caller, address), null);
+    const answer = answerOf(request);
+    request.write(formHead);
+    const piece = Buffer.alloc(5 * 1024 * 1024, 0x41);
+    for (let sent = 0; sent <= MAX_UPLOAD_BYTES; sent += piece.length) {
+      if (!request.write(piece)) await new Promise((resolve) => request.once('drain', resolve));
+    }
+    request.end(`\r\n--${BOUNDARY}--\r\n`);
+    expect(await answer).toMatchObject({ status: 413, body: { code: 'too-large' } });
+    await until(() => incoming().length === 0);
+    expect(originals().length).toBe(before);
+  });
+
   it('that is broken off leaves nothing', async () => {
     const { caller, address } = await someoneOnDam('engineer');
     const before = originals().length;
@@ -225,32 +241,38 @@ async function cookieOf(
   return { cookie: cookies, token: caller.csrfToken, address };
 }
 
-function startUpload({ cookie, token, address }: Target, contentLength: number): http.ClientRequest {
+function startUpload({ cookie, token, address }: Target, contentLength: number | null): http.ClientRequest {
   return http.request(`${app.address}/api/v1${address}`, {
     method: 'POST',
     headers: {
       cookie,
       'x-csrf-token': token,
       'content-type': `multipart/form-data; boundary=${BOUNDARY}`,
-      'content-length': contentLength,
+      ...(contentLength === null ? {} : { 'content-length': contentLength }),
     },
   });
 }
 
-function rawUpload(
-  target: Target,
-  contentLength: number,
-): Promise<{ status: number; body: { code: string; detail: string } }> {
+interface Answer {
+  status: number;
+  body: { code: string; detail: string };
+}
+
+function rawUpload(target: Target, contentLength: number): Promise<Answer> {
+  const request = startUpload(target, contentLength);
+  const answer = answerOf(request);
+  request.write(formHead);
+  return answer.finally(() => request.destroy());
+}
+
+function answerOf(request: http.ClientRequest): Promise<Answer> {
   return new Promise((resolve, reject) => {
-    const request = startUpload(target, contentLength);
     request.on('error', reject);
     request.on('response', async (response) => {
       const chunks: Buffer[] = [];
       for await (const chunk of response) chunks.push(chunk as Buffer);
       resolve({ status: response.statusCode ?? 0, body: JSON.parse(Buffer.concat(chunks).toString()) });
-      request.destroy();
     });
-    request.write(formHead);
   });
 }
 

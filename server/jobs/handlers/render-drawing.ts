@@ -89,6 +89,13 @@ function startRun(job: HeldJob, outer: AbortSignal, rows: Rows, deps: AppDeps, r
     });
   }
 
+  /** The tiles of many pages could take the room that the database needs. */
+  async function refuseFullDisk(): Promise<void> {
+    const free = await deps.storage.freeBytes();
+    if (free < deps.config.minFreeBytes)
+      throw new Error(`only ${free} bytes are free; MIN_FREE_BYTES asks for more`);
+  }
+
   /** Null when the page is a sheet now; otherwise why it cannot be one. */
   async function renderPage(
     file: string,
@@ -97,6 +104,7 @@ function startRun(job: HeldJob, outer: AbortSignal, rows: Rows, deps: AppDeps, r
     pagesDone: number,
   ): Promise<RenderRefusal | null> {
     if (page.refusal) return new RenderRefusal(page.refusal.code, page.refusal.message);
+    await refuseFullDisk();
     const { pageNumber } = page;
     const outFolder = path.join(folder, String(pageNumber));
     try {
