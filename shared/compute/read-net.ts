@@ -1,32 +1,15 @@
-import { withholdsFigures } from '#shared/compute/findings.ts';
-import { countChannels } from '#shared/compute/net/channels.ts';
-import {
-  extentOf,
-  questionLevels,
-  questionPermeability,
-  questionPlace,
-} from '#shared/compute/net/input-questions.ts';
-import { headsOf, type NetHeads } from '#shared/compute/net/net-heads.ts';
+import { extentOf, questionPermeability, questionPlace } from '#shared/compute/net/input-questions.ts';
+import type { NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind, netLinesOf } from '#shared/compute/net/net-lines.ts';
-import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
-import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
+import type { NetModel } from '#shared/compute/net/net-model.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
-import {
-  type PlacedPoint,
-  placePoint,
-  type ReadingGround,
-  readPoint,
-  withholdPoint,
-} from '#shared/compute/net/read-point.ts';
-import { checkWaterline } from '#shared/compute/net/waterline.ts';
+import { type PlacedPoint, readPoint, withholdPoint } from '#shared/compute/net/read-point.ts';
+import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
 import { type SingleInputs, singleInputs } from '#shared/compute/single-inputs.ts';
-import { entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { Finding, LineReading, NetReading, PointReading } from '#shared/contract/reading.ts';
-
-/** The waterline may depart from the headwater by this part of a drop before the readings are withheld. */
-const WATERLINE_PART = 0.05;
 
 /**
  * Reads a whole flow net: set-out, order and count of the lines, quantities, and every reading point.
@@ -38,9 +21,7 @@ const WATERLINE_PART = 0.05;
 export function readNet(document: FlowNetDocument): NetReading {
   const inputs = singleInputs(document);
   const setOut = readSetOut(document);
-  const points = entitiesOf(document, 'readingPoint')
-    .sort((a, b) => a.value.order - b.value.order || (a.id < b.id ? -1 : 1))
-    .map(({ id, value }) => placePoint(id, value, setOut.map));
+  const points = placedPoints(document, setOut.map);
   if (setOut.map === null) return withoutSetOut(document, setOut, inputs, points);
   return readOnSection(document, setOut, setOut.map, inputs, points);
 }
@@ -69,33 +50,11 @@ function readOnSection(
   inputs: SingleInputs,
   points: readonly PlacedPoint[],
 ): NetReading {
-  const { water, permeability, count } = inputs;
-  const model = modelNet(document, map, water, count.tracingAccuracyPx);
-  const accuracy = count.tracingAccuracyPx * map.unitsPerPx;
-  const heads = headsOf(model, map, water.headwater, count.drops, accuracy);
-  const channels = countChannels(model.equipotentials, linesOfKind(model.lines, 'flowLine'), slackOf(inputs));
-  const { quantities, findings: quantityFindings } = quantitiesOf(
-    heads,
-    channels,
-    inputs,
-    document.unitSystem,
-  );
-  const findings = [
-    ...setOut.findings,
-    ...model.findings,
-    ...heads.findings,
-    ...waterlineFindings(model, heads, map, inputs),
-    ...questionLevels(water, model.potentials),
-    ...questionPermeability(permeability),
-    ...channels.findings,
-    ...quantityFindings,
-  ];
-  const finished = !withholdsFigures(findings) && heads.count !== null;
+  const { model, heads, ground, quantities, findings, finished } = prepareNet(document, setOut, map, inputs);
   const extent = extentOf(model.lines, map);
-  const ground = groundOf(model, heads, setOut, map, inputs);
   return {
     state: finished ? 'read' : 'unfinished',
-    findings,
+    findings: [...findings],
     setOut: setOut.reading,
     lines: linesRead(model, heads),
     points: points.map((point) => {
@@ -104,58 +63,6 @@ function readOnSection(
       return { ...reading, findings: [...reading.findings, ...far] };
     }),
     quantities,
-  };
-}
-
-/** Pixels by which a traced line may miss what it is meant to meet. */
-function slackOf(inputs: SingleInputs): number {
-  return Math.max(2, 2 * inputs.count.tracingAccuracyPx);
-}
-
-function waterlineFindings(
-  model: NetModel,
-  heads: NetHeads,
-  map: SectionMap,
-  inputs: SingleInputs,
-): Finding[] {
-  if (heads.headwater === null) return [];
-  const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
-  const tolerance = Math.max(
-    3 * Math.hypot(tracingAccuracyPx, knownPointAccuracyPx) * map.unitsPerPx,
-    WATERLINE_PART * (heads.count?.headPerDrop ?? 0),
-  );
-  return checkWaterline(model.lines, map, heads.headwater, tolerance);
-}
-
-function groundOf(
-  model: NetModel,
-  heads: NetHeads,
-  setOut: SetOut,
-  map: SectionMap,
-  inputs: SingleInputs,
-): ReadingGround {
-  const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
-  const shapes = (...kinds: Parameters<typeof linesOfKind>[1][]) =>
-    linesOfKind(model.lines, ...kinds).map((line) => line.shape);
-  return {
-    map,
-    strips: model.strips,
-    heads,
-    walls: model.walls.map((wall) => wall.shape),
-    phreaticLines: shapes('phreaticLine'),
-    faces: shapes('ground', 'submergedFace', 'outflowFace'),
-    freeFaces: model.potentials
-      .filter((potential) => potential.level === null)
-      .map((potential) => potential.shape),
-    slack: slackOf(inputs),
-    gammaW: inputs.water.gammaW,
-    placeDoubt: placeDoubtOf(
-      setOut.reading.residual,
-      knownPointAccuracyPx,
-      tracingAccuracyPx,
-      map.unitsPerPx,
-    ),
-    unequal: heads.count?.unequal ?? false,
   };
 }
 

@@ -30,8 +30,8 @@ export type Strip = {
   readonly beforeShape: Polyline;
   readonly afterShape: Polyline;
   readonly ring: Ring;
-  /** Straight joins that close ends at which no boundary is traced. */
-  readonly openJoins: ReadonlyArray<readonly [Pair, Pair]>;
+  /** How the two ends are closed, each from the line before to the line after, both lines' ends included. */
+  readonly ways: ReadonlyArray<{ readonly points: readonly Pair[]; readonly open: boolean }>;
 };
 
 /** The longest way along carriers that still closes a strip, in lengths of its longer line. */
@@ -81,15 +81,12 @@ function outlined(before: StripLine, far: StripLine, graph: CarrierGraph, limit:
     ...[...start.points].reverse(),
   ]);
   if (ring === null) return null;
-  const openJoins: Array<readonly [Pair, Pair]> = [];
-  if (start.open) openJoins.push([pointAlong(beforeShape, 0), pointAlong(afterShape, 0)]);
-  if (end.open) {
-    openJoins.push([
-      pointAlong(beforeShape, lengthOf(beforeShape)),
-      pointAlong(afterShape, lengthOf(afterShape)),
-    ]);
-  }
-  return { before: before.id, after: far.id, beforeShape, afterShape, ring, openJoins };
+  const between = (closing: Closing, sBefore: number, sAfter: number) => ({
+    points: [pointAlong(beforeShape, sBefore), ...closing.points, pointAlong(afterShape, sAfter)],
+    open: closing.open,
+  });
+  const ways = [between(start, 0, 0), between(end, lengthOf(beforeShape), lengthOf(afterShape))];
+  return { before: before.id, after: far.id, beforeShape, afterShape, ring, ways };
 }
 
 function reversedLine(line: StripLine): StripLine {

@@ -1,0 +1,194 @@
+import { meshStrip, type StripMesh } from '#shared/compute/field/strip-mesh.ts';
+import type { Polyline } from '#shared/compute/geometry/polyline.ts';
+import type { Strip } from '#shared/compute/net/strips.ts';
+import { conjugateGradient, type SparseRows } from '#shared/compute/solve/conjugate-gradient.ts';
+
+/** Heads on the boundary of a strip, any one unit; places in base-raster pixels. */
+export type StripHeads = {
+  readonly before: (x: number, y: number) => number;
+  readonly after: (x: number, y: number) => number;
+  /** Head on a face of free outflow: the elevation there. */
+  readonly free: (x: number, y: number) => number;
+};
+
+/** The solved field of a strip. */
+export type StripField = {
+  readonly mesh: StripMesh;
+  /** Head at each corner of each triangle, in the order of `mesh.triangles`; NaN where no held line is reached. */
+  readonly heads: Float64Array;
+  readonly unknowns: number;
+};
+
+/**
+ * The head between two neighbouring equipotentials that satisfies Laplace's equation with both lines held at their
+ * heads, walls and the phreatic line closed to flow, and open ends taken as closed. Linear triangles on a constrained
+ * triangulation, finer towards ends and corners; solved by conjugate gradients to 1e-9. Null when the strip cannot be
+ * meshed or the solution does not settle. Source: Zienkiewicz, Mayer and Cheung (1966), seepage by finite elements.
+ */
+export function solveStrip(
+  strip: Strip,
+  heads: StripHeads,
+  walls: readonly Polyline[],
+  freeFaces: readonly Polyline[],
+  slack: number,
+): StripField | null {
+  const mesh = meshStrip(strip, walls, freeFaces, slack);
+  if (mesh === null || mesh.triangles.length === 0) return null;
+  const held = heldHeads(mesh, heads);
+  const reached = reachedUnknowns(mesh, held);
+  const system = assemble(mesh, held, reached);
+  const { x, converged } = conjugateGradient(system.rows, system.right, system.guess, 1e-9);
+  if (!converged) return null;
+  const at = Float64Array.from(mesh.unknowns, (unknown) => {
+    const row = system.rowOf[unknown]!;
+    return row >= 0 ? x[row]! : held[unknown]!;
+  });
+  return { mesh, heads: at, unknowns: system.rows.n };
+}
+
+/** Head of each unknown that lies on a held line; NaN for the others. */
+function heldHeads(mesh: StripMesh, heads: StripHeads): Float64Array {
+  const held = new Float64Array(mesh.unknownCount).fill(Number.NaN);
+  mesh.kinds.forEach((kind, e) => {
+    if (kind !== 'before' && kind !== 'after' && kind !== 'free') return;
+    for (const corner of [e, e % 3 === 2 ? e - 2 : e + 1]) {
+      const point = mesh.triangles[corner]!;
+      const unknown = mesh.unknowns[corner]!;
+      // Where a free face meets a line, the line's head holds.
+      if (kind === 'free' && !Number.isNaN(held[unknown]!)) continue;
+      held[unknown] = heads[kind](mesh.xy[2 * point]!, mesh.xy[2 * point + 1]!);
+    }
+  });
+  return held;
+}
+
+/** Unknowns that are joined by triangles to a held one; the others have no head. */
+function reachedUnknowns(mesh: StripMesh, held: Float64Array): Uint8Array {
+  const reached = Uint8Array.from(held, (head) => (Number.isNaN(head) ? 0 : 1));
+  const { unknowns } = mesh;
+  for (let changed = true; changed; ) {
+    changed = false;
+    for (let t = 0; t < unknowns.length; t += 3) {
+      const some = reached[unknowns[t]!]! + reached[unknowns[t + 1]!]! + reached[unknowns[t + 2]!]!;
+      if (some === 0 || some === 3) continue;
+      for (let k = 0; k < 3; k += 1) reached[unknowns[t + k]!] = 1;
+      changed = true;
+    }
+  }
+  return reached;
+}
+
+type System = { rows: SparseRows; right: Float64Array; guess: Float64Array; rowOf: Int32Array };
+
+function assemble(mesh: StripMesh, held: Float64Array, reached: Uint8Array): System {
+  const rowOf = new Int32Array(mesh.unknownCount).fill(-1);
+  let n = 0;
+  held.forEach((head, unknown) => {
+    if (Number.isNaN(head) && reached[unknown] === 1) {
+      rowOf[unknown] = n;
+      n += 1;
+    }
+  });
+  const diagonal = new Float64Array(n);
+  const right = new Float64Array(n);
+  const rows: Array<Map<number, number>> = Array.from({ length: n }, () => new Map());
+  for (let t = 0; t < mesh.unknowns.length; t += 3) {
+    const stiffness = stiffnessOf(mesh, t);
+    if (stiffness === null) continue;
+    for (let i = 0; i < 3; i += 1) {
+      const row = rowOf[mesh.unknowns[t + i]!]!;
+      if (row < 0) continue;
+      for (let j = 0; j < 3; j += 1) {
+        const value = stiffness[3 * i + j]!;
+        const other = mesh.unknowns[t + j]!;
+        const column = rowOf[other]!;
+        if (column === row) diagonal[row] = diagonal[row]! + value;
+        else if (column >= 0) rows[row]!.set(column, (rows[row]!.get(column) ?? 0) + value);
+        else if (!Number.isNaN(held[other]!)) right[row] = right[row]! - value * held[other]!;
+      }
+    }
+  }
+  for (let row = 0; row < n; row += 1) {
+    // A corner of nothing but triangles without area, on a straight outline: any head will do, it is never asked.
+    if (diagonal[row] === 0) diagonal[row] = 1;
+  }
+  return { rows: packed(rows, diagonal), right, guess: new Float64Array(n).fill(meanOf(held)), rowOf };
+}
+
+/** Stiffness of a linear triangle, 3 × 3 by rows; null for one without area. */
+function stiffnessOf(mesh: StripMesh, t: number): number[] | null {
+  const at = (k: number, axis: number) => mesh.xy[2 * mesh.triangles[t + (k % 3)]! + axis]!;
+  const b = [0, 1, 2].map((i) => at(i + 1, 1) - at(i + 2, 1));
+  const c = [0, 1, 2].map((i) => at(i + 2, 0) - at(i + 1, 0));
+  const twice = Math.abs(b[0]! * c[1]! - b[1]! * c[0]!);
+  if (!(twice > 1e-9)) return null;
+  return [0, 1, 2].flatMap((i) => [0, 1, 2].map((j) => (b[i]! * b[j]! + c[i]! * c[j]!) / (2 * twice)));
+}
+
+function packed(rows: ReadonlyArray<ReadonlyMap<number, number>>, diagonal: Float64Array): SparseRows {
+  const starts = new Int32Array(rows.length + 1);
+  rows.forEach((row, i) => {
+    starts[i + 1] = starts[i]! + row.size;
+  });
+  const columns = Int32Array.from(rows.flatMap((row) => [...row.keys()]));
+  const values = Float64Array.from(rows.flatMap((row) => [...row.values()]));
+  return { n: rows.length, starts, columns, values, diagonal };
+}
+
+function meanOf(held: Float64Array): number {
+  const known = held.filter((head) => !Number.isNaN(head));
+  return known.length === 0 ? 0 : known.reduce((sum, head) => sum + head, 0) / known.length;
+}
+
+/**
+ * Head at a place in a solved strip; the place may lie outside its triangles by `slack` pixels, as a point on a traced
+ * boundary does. Null where the field has no head.
+ */
+export function fieldHeadAt(field: StripField, x: number, y: number, slack: number): number | null {
+  const { mesh, heads } = field;
+  let best: number | null = null;
+  let worstInside = Number.NEGATIVE_INFINITY;
+  for (let t = 0; t < mesh.triangles.length; t += 3) {
+    const parts = partsAt(mesh, t, x, y, slack);
+    if (parts === null) continue;
+    const inside = Math.min(parts.a, parts.b, parts.c);
+    if (inside <= worstInside) continue;
+    const held = heldInside(parts);
+    const head = held[0] * heads[t]! + held[1] * heads[t + 1]! + held[2] * heads[t + 2]!;
+    if (Number.isNaN(head)) continue;
+    worstInside = inside;
+    best = head;
+    if (inside >= 0) return head;
+  }
+  return best;
+}
+
+type Parts = { a: number; b: number; c: number };
+
+/** Barycentric parts of a place in a triangle; null when it lies farther than `slack` from the triangle's box. */
+function partsAt(mesh: StripMesh, t: number, x: number, y: number, slack: number): Parts | null {
+  const { xy, triangles } = mesh;
+  const [p, q, r] = [triangles[t]!, triangles[t + 1]!, triangles[t + 2]!];
+  const [ax, ay, bx, by, cx, cy] = [
+    xy[2 * p]!,
+    xy[2 * p + 1]!,
+    xy[2 * q]!,
+    xy[2 * q + 1]!,
+    xy[2 * r]!,
+    xy[2 * r + 1]!,
+  ];
+  if (x < Math.min(ax, bx, cx) - slack || x > Math.max(ax, bx, cx) + slack) return null;
+  if (y < Math.min(ay, by, cy) - slack || y > Math.max(ay, by, cy) + slack) return null;
+  const whole = (bx - ax) * (cy - ay) - (by - ay) * (cx - ax);
+  if (whole === 0) return null;
+  const b = ((x - ax) * (cy - ay) - (y - ay) * (cx - ax)) / whole;
+  const c = ((bx - ax) * (y - ay) - (by - ay) * (x - ax)) / whole;
+  return { a: 1 - b - c, b, c };
+}
+
+/** Parts brought back into the triangle, so that nothing is extrapolated. */
+function heldInside({ a, b, c }: Parts): [number, number, number] {
+  const [pa, pb, pc] = [Math.max(0, a), Math.max(0, b), Math.max(0, c)];
+  const sum = pa + pb + pc;
+  return [pa / sum, pb / sum, pc / sum];
+}

@@ -1,0 +1,130 @@
+import { withholdsFigures } from '#shared/compute/findings.ts';
+import { countChannels } from '#shared/compute/net/channels.ts';
+import { questionLevels, questionPermeability } from '#shared/compute/net/input-questions.ts';
+import { headsOf, type NetHeads } from '#shared/compute/net/net-heads.ts';
+import { linesOfKind } from '#shared/compute/net/net-lines.ts';
+import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
+import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
+import { quantitiesOf } from '#shared/compute/net/quantities.ts';
+import { type PlacedPoint, placePoint, type ReadingGround } from '#shared/compute/net/read-point.ts';
+import { checkWaterline } from '#shared/compute/net/waterline.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import type { SetOut } from '#shared/compute/set-out.ts';
+import type { SingleInputs } from '#shared/compute/single-inputs.ts';
+import { entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
+import type { Finding, NetReading } from '#shared/contract/reading.ts';
+
+/** The waterline may depart from the headwater by this part of a drop before the readings are withheld. */
+const WATERLINE_PART = 0.05;
+
+/** A set-out net in order and counted, against which points are read by whatever rule. */
+export type PreparedNet = {
+  readonly model: NetModel;
+  readonly heads: NetHeads;
+  readonly ground: ReadingGround;
+  readonly quantities: NetReading['quantities'];
+  readonly findings: readonly Finding[];
+  /** True when nothing is missing or wrong, so that figures may be given. */
+  readonly finished: boolean;
+};
+
+/** The reading points of a document in the order of the schedule, placed on the sheet and in the section. */
+export function placedPoints(document: FlowNetDocument, map: SectionMap | null): PlacedPoint[] {
+  return entitiesOf(document, 'readingPoint')
+    .sort((a, b) => a.value.order - b.value.order || (a.id < b.id ? -1 : 1))
+    .map(({ id, value }) => placePoint(id, value, map));
+}
+
+/**
+ * Orders and counts the net of a document whose section is set out, works out its quantities and gathers every finding
+ * about it. Pure and total, as `readNet`.
+ */
+export function prepareNet(
+  document: FlowNetDocument,
+  setOut: SetOut,
+  map: SectionMap,
+  inputs: SingleInputs,
+): PreparedNet {
+  const { water, permeability, count } = inputs;
+  const model = modelNet(document, map, water, count.tracingAccuracyPx);
+  const accuracy = count.tracingAccuracyPx * map.unitsPerPx;
+  const heads = headsOf(model, map, water.headwater, count.drops, accuracy);
+  const channels = countChannels(model.equipotentials, linesOfKind(model.lines, 'flowLine'), slackOf(inputs));
+  const { quantities, findings: quantityFindings } = quantitiesOf(
+    heads,
+    channels,
+    inputs,
+    document.unitSystem,
+  );
+  const findings = [
+    ...setOut.findings,
+    ...model.findings,
+    ...heads.findings,
+    ...waterlineFindings(model, heads, map, inputs),
+    ...questionLevels(water, model.potentials),
+    ...questionPermeability(permeability),
+    ...channels.findings,
+    ...quantityFindings,
+  ];
+  const finished = !withholdsFigures(findings) && heads.count !== null;
+  return {
+    model,
+    heads,
+    ground: groundOf(model, heads, setOut, map, inputs),
+    quantities,
+    findings,
+    finished,
+  };
+}
+
+/** Pixels by which a traced line may miss what it is meant to meet. */
+function slackOf(inputs: SingleInputs): number {
+  return Math.max(2, 2 * inputs.count.tracingAccuracyPx);
+}
+
+function waterlineFindings(
+  model: NetModel,
+  heads: NetHeads,
+  map: SectionMap,
+  inputs: SingleInputs,
+): Finding[] {
+  if (heads.headwater === null) return [];
+  const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
+  const tolerance = Math.max(
+    3 * Math.hypot(tracingAccuracyPx, knownPointAccuracyPx) * map.unitsPerPx,
+    WATERLINE_PART * (heads.count?.headPerDrop ?? 0),
+  );
+  return checkWaterline(model.lines, map, heads.headwater, tolerance);
+}
+
+function groundOf(
+  model: NetModel,
+  heads: NetHeads,
+  setOut: SetOut,
+  map: SectionMap,
+  inputs: SingleInputs,
+): ReadingGround {
+  const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
+  const shapes = (...kinds: Parameters<typeof linesOfKind>[1][]) =>
+    linesOfKind(model.lines, ...kinds).map((line) => line.shape);
+  return {
+    map,
+    strips: model.strips,
+    heads,
+    walls: model.walls.map((wall) => wall.shape),
+    phreaticLines: shapes('phreaticLine'),
+    faces: shapes('ground', 'submergedFace', 'outflowFace'),
+    freeFaces: model.potentials
+      .filter((potential) => potential.level === null)
+      .map((potential) => potential.shape),
+    slack: slackOf(inputs),
+    gammaW: inputs.water.gammaW,
+    placeDoubt: placeDoubtOf(
+      setOut.reading.residual,
+      knownPointAccuracyPx,
+      tracingAccuracyPx,
+      map.unitsPerPx,
+    ),
+    unequal: heads.count?.unequal ?? false,
+  };
+}
