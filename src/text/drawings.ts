@@ -174,8 +174,8 @@ export const drawingsText = {
 
   putAway: 'Put away',
   bringBack: 'Bring back',
-  putAwayOf: (name: string) => `Put ${name} away`,
-  bringBackOf: (name: string) => `Bring ${name} back`,
+  putAwayOf: (name: string) => `Put away ${name}`,
+  bringBackOf: (name: string) => `Bring back ${name}`,
   putAwayDone: (name: string) => `${name} is put away. It can be brought back.`,
   broughtBack: (name: string) => `${name} is back.`,
   drawingIsPutAway: 'This drawing was put away. It can be read, not changed.',

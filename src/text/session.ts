@@ -47,7 +47,7 @@ export const sessionText = {
   askAgain: 'Ask for a new link',
 
   accountTitle: 'Your account',
-  accountMenu: (name: string) => `Account of ${name}`,
+  accountMenu: (initials: string, name: string) => `${initials}, account of ${name}`,
   people: 'People',
   mails: 'Mails',
   signOut: 'Sign out',

@@ -145,14 +145,14 @@ describe('a section', () => {
   });
 
   it('stands in the register with its nets, and a drawing put away is found where it was put', async () => {
-    await page.getByRole('button', { name: 'Put HF-114 rev C away' }).click();
+    await page.getByRole('button', { name: 'Put away HF-114 rev C' }).click();
     await page.getByText('This drawing was put away.').waitFor();
     await page.getByRole('link', { name: 'Harrow Fen Dam' }).click();
     await ready('second.jpg').waitFor();
     expect(await page.getByRole('link', { name: 'HF-114 rev C' }).count()).toBe(0);
     await page.getByRole('link', { name: 'Show what was put away' }).click();
     await page.getByRole('link', { name: 'HF-114 rev C' }).click();
-    await page.getByRole('button', { name: 'Bring HF-114 rev C back' }).click();
+    await page.getByRole('button', { name: 'Bring back HF-114 rev C' }).click();
     await page.getByRole('link', { name: 'Harrow Fen Dam' }).click();
     await page.getByText('Flood 119.40, known points needed').waitFor();
   });

@@ -16,7 +16,7 @@ export function AccountMenu() {
   const { person } = session;
   return (
     <Menu
-      label={text.accountMenu(person.name)}
+      label={text.accountMenu(initialsOf(person.name), person.name)}
       button={initialsOf(person.name)}
       buttonClassName="grid size-7 min-h-0 place-items-center rounded-full border border-ink bg-film text-xs font-semibold pointer-coarse:size-10"
     >
