@@ -30,6 +30,10 @@ export class Life {
     this.#askToEnd('asked');
   }
 
+  get isEnding() {
+    return this.#ending;
+  }
+
   /** @template T @param {Promise<T>} step @returns {Promise<T>} */
   async step(step) {
     const result = await step;
@@ -67,7 +71,8 @@ export async function live(storageDir, main) {
   try {
     code = await main(life);
   } catch (error) {
-    if (!(error instanceof Interrupted)) {
+    // A Ctrl-C also reaches the program that was waited for; that it ended is then no fault.
+    if (!(error instanceof Interrupted) && !life.isEnding) {
       process.stderr.write(`${sentenceFor(error, storageDir)}\n`);
       if (process.env.LOG_LEVEL === 'debug') console.error(error);
       code = 1;

@@ -2,6 +2,8 @@ import { spawn } from 'node:child_process';
 
 /** The last part of a program's output is what explains a failure; the rest is not kept. */
 const KEPT_CHARS = 64_000;
+const NO_SPACE =
+  'the disk is full. Free some space, or set STORAGE_DIR to a folder on another disk, then start again.';
 
 /**
  * @typedef {object} RunOptions
@@ -59,11 +61,12 @@ function withResolvers() {
 }
 
 /**
- * Why a program failed, on one line: the error it names, or else its last lines that say something.
+ * Why a program failed, on one line: a full disk, the error it names, or else its last lines that say something.
  * @param {string} output
  * @param {number} [count]
  */
 export function lastLines(output, count = 1) {
+  if (/No space left on device|ENOSPC/.test(output)) return NO_SPACE;
   const lines = output.split('\n').map((line) => line.trim());
   const named = lines.find((line) => /^(\w*Error|error)\b.*?: /.test(line));
   if (named) return named;

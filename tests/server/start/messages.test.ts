@@ -176,11 +176,17 @@ describe('the count at the end of the tests', () => {
 });
 
 describe("a program's last words", () => {
+  it('are that the disk is full, when it is, whatever came after', () => {
+    const output =
+      'FATAL: could not write: No space left on device\ninitdb: removing contents of data directory\n';
+    expect(lastLines(output)).toMatch(/^the disk is full\. Free some space/);
+  });
+
   it('are the error it names, without empty lines and stack frames', () => {
     expect(lastLines('first\nbad thing\n\n    at run (x.js:1)\n', 1)).toBe('bad thing');
-    expect(lastLines("x.ts:1\nTypeError: no such thing\n  at run (x.ts:1) {\n  code: 'X'\n}\nNode.js v20\n")).toBe(
-      'TypeError: no such thing',
-    );
+    expect(
+      lastLines("x.ts:1\nTypeError: no such thing\n  at run (x.ts:1) {\n  code: 'X'\n}\nNode.js v20\n"),
+    ).toBe('TypeError: no such thing');
     expect(lastLines('', 1)).toBe('it gave no reason');
   });
 });
