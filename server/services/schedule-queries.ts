@@ -1,11 +1,12 @@
 import type { EntityManager } from 'typeorm';
-import { readNet } from '#shared/compute/read-net.ts';
+import { AppError } from '#server/errors/app-error.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 import { readDocument } from './net-document.ts';
 import { type NetPlace, placeOfNet, sectionTitle } from './net-place.ts';
 import { createReadingCache } from './reading-cache.ts';
+import { readInThread } from './reading-threads.ts';
 
 const cache = createReadingCache();
 
@@ -20,16 +21,29 @@ export async function scheduleOf(manager: EntityManager, netId: string): Promise
   return readingOf(manager, await placeOfNet(manager, netId));
 }
 
-/** The reading of a net as it stands, kept from the last time when nothing changed. */
+/**
+ * The reading of a net as it stands, kept from the last time when nothing changed.
+ * @throws AppError net-unfinished when the net is such a tangle that it cannot be read in time
+ */
 export function readingOf(manager: EntityManager, place: NetPlace): Promise<NetReading> {
   const { net, dam } = place;
   // Whatever the reading depends on besides the entities is in the key as well.
   const key = JSON.stringify([net.id, net.changeNumber, net.name, net.unitSystem, dam.datum]);
-  return cache.get(key, async () => readNet(await readDocument(manager, place)));
+  return cache.get(key, async () => readInThread(await readDocument(manager, place)));
 }
 
 /** Without it some spreadsheets read UTF-8 as Latin letters, and "±" comes out as two signs. */
 const BYTE_ORDER_MARK = '\ufeff';
+
+/** As `readingOf`, with null for a net that cannot be read: for lists, which one tangle must not spoil. */
+export async function readingIfAny(manager: EntityManager, place: NetPlace): Promise<NetReading | null> {
+  try {
+    return await readingOf(manager, place);
+  } catch (error) {
+    if (error instanceof AppError) return null;
+    throw error;
+  }
+}
 
 /** The schedule as CSV. */
 export async function scheduleFile(manager: EntityManager, netId: string): Promise<Download> {

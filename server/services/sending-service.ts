@@ -4,7 +4,6 @@ import { AppError, conflict, invalidInput } from '#server/errors/app-error.ts';
 import type { Actor } from '#server/http/route-record.ts';
 import { sentForCheckingMail } from '#server/mail/templates/checking-mails.ts';
 import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
-import { readNet } from '#shared/compute/read-net.ts';
 import type { PersonRef } from '#shared/contract/common.ts';
 import type { RevisionPayload, RevisionSummary, sendInput } from '#shared/contract/revisions.ts';
 import { revisionFacts, scheduleFigures } from './checking-letters.ts';
@@ -15,6 +14,7 @@ import { drawersOfNet } from './net-drawers.ts';
 import { lockNet } from './net-locks.ts';
 import { type NetPlace, placeOfNet, sectionTitle } from './net-place.ts';
 import { refuseTakenId } from './new-id.ts';
+import { readInThread } from './reading-threads.ts';
 import { revisionLabel } from './revision-label.ts';
 import { freezePayload } from './revision-payload.ts';
 import { revisionSummaryOf } from './revision-queries.ts';
@@ -48,7 +48,7 @@ export function createSendingService(deps: SendingDeps) {
   /** What is to be frozen, once nothing stands in its way, and whom it goes to. */
   async function draw(place: NetPlace, previous: RevisionEntity | null, input: SendInput, actor: Actor) {
     const document = await readDocument(manager, place);
-    const reading = readNet(document);
+    const reading = await readInThread(document);
     const reviewers = await reviewersOfDam(manager, place.dam.id);
     const refusal = await sendingRefusal(manager, place, reading, previous, reviewers);
     if (refusal) throw refusal;

@@ -2,7 +2,7 @@ import type { EntityManager } from 'typeorm';
 import type { WaitingDto } from '#shared/contract/dams.ts';
 import { drawingTitle } from './drawing-title.ts';
 import { placeOfNet, sectionTitle } from './net-place.ts';
-import { readingOf } from './schedule-queries.ts';
+import { readingIfAny } from './schedule-queries.ts';
 
 export type WaitingItem = WaitingDto['items'][number];
 
@@ -131,11 +131,10 @@ async function toFinish(manager: EntityManager, personId: string): Promise<Waiti
   );
   const items: WaitingItem[] = [];
   for (const row of rows) {
-    const reading = await readingOf(manager, await placeOfNet(manager, row.net_id));
-    if (reading.setOut.state !== 'fitted')
+    const reading = await readingIfAny(manager, await placeOfNet(manager, row.net_id));
+    if (reading && reading.setOut.state !== 'fitted')
       items.push(itemOf('calibrate', row, { text: `Put ${titleOf(row)} to scale` }));
-    else if (reading.state === 'unfinished')
-      items.push(itemOf('trace', row, { text: `Finish ${titleOf(row)}` }));
+    else if (reading?.state !== 'read') items.push(itemOf('trace', row, { text: `Finish ${titleOf(row)}` }));
   }
   return items;
 }

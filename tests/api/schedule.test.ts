@@ -6,9 +6,11 @@ import {
   addFinishedNet,
   addNet,
   batchesOf,
+  fillNet,
   finishedDocument,
   openNet,
   putSingle,
+  tangledDocument,
 } from '#tests/support/net-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addMember } from '#tests/support/test-people.ts';
@@ -57,6 +59,23 @@ describe('the schedule', () => {
     // u = γw(h − z): twice the unit weight is twice the pressure.
     const ratio = after.body.points[0].porePressure / before.body.points[0].porePressure;
     expect(ratio).toBeCloseTo(2, 9);
+  });
+
+  it('of a tangle is refused in time, and nobody else has to wait for it', async () => {
+    const { caller, netId } = await addNet(app);
+    await fillNet(caller, netId, tangledDocument());
+    const refused = caller.get(`/nets/${netId}/schedule`).expect(422);
+    const other = await addFinishedNet(app);
+    await other.caller.get(`/nets/${other.netId}/schedule`).expect(200);
+    expect((await refused).body).toMatchObject({
+      code: 'net-unfinished',
+      detail: expect.stringMatching(/crosses itself/),
+    });
+    // It is known from now on, and the list of what waits goes on without it.
+    const asked = Date.now();
+    await caller.get(`/nets/${netId}/schedule`).expect(422);
+    await caller.get('/waiting').expect(200);
+    expect(Date.now() - asked).toBeLessThan(4000);
   });
 
   it('is downloaded as CSV under a name that says what it is of', async () => {

@@ -5,6 +5,7 @@ import {
   type EntityKind,
   type EntityOf,
   type FlowNetDocument,
+  type SheetPoint,
   SINGLE_KINDS,
   singleOf,
 } from '#shared/contract/document.ts';
@@ -135,6 +136,15 @@ export function finishedDocument(readingCount = 3): FlowNetDocument {
     clicked: true,
   }));
   return exactNetDocument(net, { pxPerUnit, readings });
+}
+
+/** A finished net but for its base, which was scribbled over and over itself. */
+export function tangledDocument(): FlowNetDocument {
+  const document = finishedDocument();
+  const points = Array.from({ length: 400 }, (_, i): SheetPoint => [(i * 2617) % 5000, (i * 1733) % 3500]);
+  for (const { value } of Object.values(document.entities))
+    if (value.kind === 'line' && value.line === 'impervious') value.points = points;
+  return document;
 }
 
 /** A dam with a finished net. */
