@@ -1,0 +1,89 @@
+import type { Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { apronScan } from '#tests/support/journey/apron-sheet.ts';
+import { allSaved, cell } from '#tests/support/journey/desk-steps.ts';
+import { addDrawings, openNewNet } from '#tests/support/journey/drawing-steps.ts';
+import { type JourneyWorld, openWorld } from '#tests/support/journey/journey-world.ts';
+
+let world: JourneyWorld;
+let page: Page;
+let address: string;
+
+beforeAll(async () => {
+  world = await openWorld();
+  page = await world.pageOf(world.engineer);
+  await page.goto(`/dams/${world.damId}`);
+  await addDrawings(page, [{ name: 'two.png', mimeType: 'image/png', buffer: await apronScan() }]);
+  await openNewNet(page, 'two.png', { name: 'A–A', chainage: '10' });
+  address = new URL(page.url()).pathname;
+  // A batch in conflict is answered 409, a lost connection with nothing: the browser writes both to its console.
+  world.browser.expectConsoleError(/Failed to load resource|net::ERR/);
+});
+afterAll(() => world.close());
+
+/** Others see a change within a few seconds. */
+const WITHIN = { timeout: 8000 };
+
+const headwater = (on: Page) => on.getByRole('region', { name: 'Water levels' }).getByLabel(/^Headwater/);
+
+async function typeHeadwater(on: Page, level: string): Promise<void> {
+  if (!(await headwater(on).isVisible())) await cell(on, 'Headwater').click();
+  await headwater(on).fill(level);
+  await headwater(on).press('Enter');
+}
+
+describe('a figure typed on the desk', () => {
+  it('that cannot be read stays as typed, with the reason beside it', async () => {
+    await typeHeadwater(page, '118 or so');
+    await page.getByText('Not a number. Type it as 118.25 or 118,25.').waitFor();
+    expect(await headwater(page).inputValue()).toBe('118 or so');
+  });
+
+  it('is taken with a decimal comma and saved by itself', async () => {
+    await typeHeadwater(page, '118,25');
+    await expect.poll(() => cell(page, 'Headwater').textContent(), WITHIN).toContain('118.25 m');
+    await allSaved(page);
+  });
+});
+
+describe('a net open in two tabs of one browser', () => {
+  it('is written in one of them; the other says so, follows, and can take over', async () => {
+    const second = await page.context().newPage();
+    await second.goto(address);
+    await second.getByText(/open in another tab of this browser/).waitFor();
+    await typeHeadwater(page, '117');
+    await expect.poll(() => cell(second, 'Headwater').textContent(), WITHIN).toContain('117.00 m');
+    await second.getByRole('button', { name: 'Write here instead' }).click();
+    await page.getByText(/open in another tab of this browser/).waitFor();
+    await second.getByText(/open in another tab of this browser/).waitFor({ state: 'hidden' });
+    await typeHeadwater(second, '116');
+    await allSaved(second);
+    await expect.poll(() => cell(page, 'Headwater').textContent(), WITHIN).toContain('116.00 m');
+    await second.close();
+    // The lock falls back to the tab that is left.
+    await page.getByText(/open in another tab of this browser/).waitFor({ state: 'hidden' });
+  });
+});
+
+describe('two people who change the same thing', () => {
+  it('are shown both versions, and nothing is overwritten until one is chosen', async () => {
+    const other = await world.pageOf(world.engineer);
+    await other.goto(address);
+    await cell(other, 'Headwater').waitFor();
+    await page.context().setOffline(true);
+    await typeHeadwater(page, '111');
+    await page.getByText(/kept in this browser/).waitFor();
+    await typeHeadwater(other, '112');
+    await allSaved(other);
+    await page.context().setOffline(false);
+    await page.getByText(/was changed by I. Marsh meanwhile/).waitFor();
+    await expect.poll(() => cell(other, 'Headwater').textContent(), WITHIN).toContain('112.00 m');
+    await page.getByRole('button', { name: 'Compare' }).click();
+    const dialog = page.getByRole('dialog', { name: 'Changed by two people' });
+    await dialog.getByRole('cell', { name: '112', exact: true }).waitFor();
+    await dialog.getByRole('button', { name: 'Put mine on top' }).click();
+    await dialog.getByRole('button', { name: 'Close' }).click();
+    await allSaved(page);
+    await expect.poll(() => cell(other, 'Headwater').textContent(), WITHIN).toContain('111.00 m');
+  });
+});
