@@ -135,8 +135,15 @@ async function startPostmaster({ binDir, dataDir }, user, rememberedPort, settin
   const args = ['start', '-w', '-t', String(START_SECONDS), '-D', dataDir, '-l', log];
   // A group of its own: Ctrl-C in the terminal must reach the server first and the database last.
   const start = await runCommand(pgCtl, args, { user, cwd: '/', detached: true });
-  if (start.code !== 0) throw faults.clusterBroken(dataDir, reasonIn(log, start.output));
+  if (start.code !== 0) throw brokenFault(dataDir, reasonIn(log, start.output));
   return { port, startedHere: true };
+}
+
+/** A full disk is no broken database, and moving it away would be the wrong advice. @param {string} dataDir @param {string} reason */
+export function brokenFault(dataDir, reason) {
+  return /No space left on device/.test(reason)
+    ? faults.noSpaceLeft(dataDir)
+    : faults.clusterBroken(dataDir, reason);
 }
 
 /** Line 4 of postmaster.pid is the port. @param {string} dataDir */

@@ -8,7 +8,7 @@ import { sourcesStamp } from '#server/start/client-build.mjs';
 import { checkDiskSpace } from '#server/start/disk-space.mjs';
 import { faults, inWords, sentenceFor } from '#server/start/messages.mjs';
 import { checkPortFree, wantedPort } from '#server/start/ports.mjs';
-import { reasonIn } from '#server/start/postgres-cluster.mjs';
+import { brokenFault, reasonIn } from '#server/start/postgres-cluster.mjs';
 import { choosePostgres, findPostgres } from '#server/start/postgres-find.mjs';
 import { lastLines } from '#server/start/run-command.mjs';
 import { makeSecrets, readSecrets } from '#server/start/secrets.mjs';
@@ -129,6 +129,12 @@ describe('the reason for a database that does not start', () => {
       '2026-12-01 12:00:00 UTC [1] LOG:  starting\n2026-12-01 12:00:01 UTC [1] PANIC:  could not locate a valid checkpoint record\n',
     );
     expect(reasonIn(at('start.log'), 'x')).toBe('could not locate a valid checkpoint record.');
+  });
+
+  it('is not taken for damage when the disk is full', () => {
+    const full = 'could not write lock file "postmaster.pid": No space left on device.';
+    expect(brokenFault('/data/postgres', full).message).toMatch(/^The disk ran full while writing below/);
+    expect(brokenFault('/data/postgres', 'x.').message).toMatch(/^The database in .* does not start: x\./);
   });
 
   it('falls back to what was said elsewhere', () => {
