@@ -1,12 +1,15 @@
 import type { AppDeps } from '#server/app-deps.ts';
+import { NetEntity } from '#server/entities/net-entity.ts';
 import { PersonEntity } from '#server/entities/person-entity.ts';
 import { readDocument } from '#server/services/net-document.ts';
 import { placeOfNet } from '#server/services/net-place.ts';
+import { createSendingService } from '#server/services/sending-service.ts';
+import { inTransaction } from '#server/services/service-deps.ts';
 import { addDemoDam, addDemoDrawing } from './demo-drawings.ts';
 import { demoId } from './demo-ids.ts';
 import { apronNet, fullSupplyNet, halfTracedNet, sectionCCKnownPoints } from './demo-nets.ts';
 import { addDemoNotes } from './demo-notes.ts';
-import { addDemoPeople, demoPeople } from './demo-people.ts';
+import { addDemoPeople, demoPeople, engineer, reviewer } from './demo-people.ts';
 import { addDemoNet, addDemoSection } from './demo-sections.ts';
 
 const sectionB = demoId(20);
@@ -50,4 +53,15 @@ export async function seedDemo(deps: AppDeps): Promise<void> {
 
   const document = await readDocument(deps.db.manager, await placeOfNet(deps.db.manager, fullSupply));
   await addDemoNotes(deps, fullSupply, document);
+  await sendApron(deps);
+}
+
+/** Gives the reviewer something to check, and the outbox a mail. */
+async function sendApron(deps: AppDeps): Promise<void> {
+  await inTransaction(deps, async (tx) => {
+    const { changeNumber } = await tx.manager.findOneByOrFail(NetEntity, { id: apron });
+    const message = 'The tailwater is the lowest of the last ten years. Please check S3 first.';
+    const input = { id: demoId(70), reviewerId: reviewer.id, message, changeNumber: Number(changeNumber) };
+    await createSendingService(tx).send(apron, input, engineer);
+  });
 }

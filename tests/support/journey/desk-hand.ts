@@ -8,6 +8,7 @@ export interface DeskHand {
   sheet: Locator;
   /** Clicks a place on the sheet. */
   click(at: Place): Promise<void>;
+  moveTo(at: Place): Promise<void>;
   /** Clicks along a line and ends it with Enter; Ctrl is held, so that nothing snaps. */
   trace(points: readonly Place[]): Promise<void>;
 }
@@ -48,6 +49,7 @@ export async function takeDesk(page: Page): Promise<DeskHand> {
   return {
     sheet,
     click,
+    moveTo: async (at) => page.mouse.move(...onScreen(at)),
     async trace(points) {
       await page.keyboard.down('Control');
       for (const point of points) await click(point);
