@@ -8,7 +8,6 @@ import { flatShare, LINE_WORK_SHARE } from './flatness.ts';
 import { openPage, withPdf } from './pdf-document.ts';
 import { type ChosenDpi, chooseDpi, mainScanDpi } from './pdf-dpi.ts';
 import { largestPicturePixels } from './pdf-picture-sizes.ts';
-import { findPageScan } from './pdf-scan.ts';
 import { RenderRefusal, refusals } from './refusal.ts';
 import { isTooLargePicture, pictureWarning, takeWarnings } from './render-log.ts';
 import { renderScan } from './render-scan.ts';
@@ -37,9 +36,15 @@ export async function renderPdf(
   request: RenderRequest,
   onProgress: (share: number) => void,
 ): Promise<RenderedSheet> {
-  const scan = await findPageScan(request.file, request.pageNumber);
-  const asItIs = scan && (await renderScan(scan, request, onProgress));
+  const asItIs = (await largestPicturePixels(request.file)) > 0 && (await renderAsScan(request, onProgress));
   return asItIs || renderDrawn(request, onProgress);
+}
+
+/** Loaded when a file holds a picture at all: most of what it needs takes longer to load than to use. */
+async function renderAsScan(request: RenderRequest, onProgress: (share: number) => void) {
+  const { findPageScan } = await import('./pdf-scan.ts');
+  const scan = await findPageScan(request.file, request.pageNumber);
+  return scan && renderScan(scan, request, onProgress);
 }
 
 async function renderDrawn(

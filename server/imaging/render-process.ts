@@ -37,6 +37,7 @@ const defaultLimits: RenderLimits = {
 };
 // By its own address: from a bare name Node would look in the folder the server was started in.
 const tsxLoader = pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
+const plainPackages = new URL('./plain-packages.mjs', import.meta.url).href;
 const POLL_MS = 200;
 const KEPT_LOG = 8 * 1024;
 
@@ -144,7 +145,7 @@ class ForkedRenderProcess implements RenderProcess {
   #started(): ChildProcess {
     if (this.#child?.connected) return this.#child;
     const child = fork(this.#childFile, [], {
-      execArgv: ['--import', tsxLoader, '--expose-gc'],
+      execArgv: ['--import', tsxLoader, '--import', plainPackages, '--expose-gc'],
       stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
       // Nothing of the server's environment: no database address, no secret.
       env: { PATH: process.env.PATH, HOME: process.env.HOME, TMPDIR: process.env.TMPDIR, VIPS_WARNING: '0' },
