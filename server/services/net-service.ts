@@ -6,11 +6,15 @@ import type { Clock } from '#server/http/clock.ts';
 import type { Actor } from '#server/http/route-record.ts';
 import type { LivePort } from '#server/live/live-port.ts';
 import type { netInput, netPatch } from '#shared/contract/nets.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { writeEvent } from './event-writer.ts';
 import { lockNetsOfSection, lockSection, lockSectionOfNet } from './net-locks.ts';
-import { type NetPlace, placeOfNet, placeOfSection, refusePutAway, sectionTitle } from './net-place.ts';
+import { type NetPlace, placeOfNet, placeOfSection, refusePutAway } from './net-place.ts';
 import { firstNetEntities, newEntityRows } from './net-singles.ts';
 import { refuseTakenId } from './new-id.ts';
+
+/** A statement takes 65,535 values at most, and a row has thirteen. */
+const ROWS_AT_ONCE = 1000;
 
 export interface NetServiceDeps {
   manager: EntityManager;
@@ -41,14 +45,17 @@ export function createNetService({ manager, clock, live }: NetServiceDeps) {
 
   async function insertNet(net: Partial<NetEntity>, rows: DocumentEntityRow[]): Promise<void> {
     await manager.insert(NetEntity, net);
-    await manager.insert(DocumentEntityRow, rows as QueryDeepPartialEntity<DocumentEntityRow>[]);
+    for (let first = 0; first < rows.length; first += ROWS_AT_ONCE) {
+      const some = rows.slice(first, first + ROWS_AT_ONCE);
+      await manager.insert(DocumentEntityRow, some as QueryDeepPartialEntity<DocumentEntityRow>[]);
+    }
   }
 
   async function setArchived(netId: string, archivedAt: Date | null, actor: Actor): Promise<void> {
     const place = await placeOfNet(manager, netId);
     if ((place.net.archivedAt === null) === (archivedAt === null)) return;
     await manager.update(NetEntity, { id: netId }, { archivedAt });
-    const named = `the net "${place.net.name}" of ${sectionTitle(place.section)}`;
+    const named = `the net "${place.net.name}" of ${sectionTitle(place.section.name)}`;
     await (archivedAt
       ? announce(place, netId, actor, 'net.archived', `put ${named} away`)
       : announce(place, netId, actor, 'net.restored', `brought ${named} back`));
@@ -70,7 +77,7 @@ export function createNetService({ manager, clock, live }: NetServiceDeps) {
         at,
       });
       await insertNet({ ...input, sectionId, unitSystem, ...startOf(changeNumber, actor, at) }, rows);
-      const text = `started the net "${input.name}" on ${sectionTitle(place.section)}`;
+      const text = `started the net "${input.name}" on ${sectionTitle(place.section.name)}`;
       await announce(place, input.id, actor, 'net.created', text);
     },
 
@@ -102,7 +109,7 @@ export function createNetService({ manager, clock, live }: NetServiceDeps) {
         },
         rows,
       );
-      const text = `copied the net "${place.net.name}" of ${sectionTitle(place.section)} to "${input.name}"`;
+      const text = `copied the net "${place.net.name}" of ${sectionTitle(place.section.name)} to "${input.name}"`;
       await announce(place, input.id, actor, 'net.copied', text);
     },
 
@@ -111,7 +118,7 @@ export function createNetService({ manager, clock, live }: NetServiceDeps) {
       refusePutAway(place);
       if (patch.name === place.net.name) return;
       await manager.update(NetEntity, { id: netId }, { name: patch.name });
-      const text = `renamed the net "${place.net.name}" of ${sectionTitle(place.section)} to "${patch.name}"`;
+      const text = `renamed the net "${place.net.name}" of ${sectionTitle(place.section.name)} to "${patch.name}"`;
       await announce(place, netId, actor, 'net.renamed', text);
     },
 
