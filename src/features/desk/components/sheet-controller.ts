@@ -4,7 +4,7 @@ import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
-import { buildScene, type NoteBalloon, noteIdOf } from '../render/build-scene.ts';
+import { buildScene, type NoteBalloon, noteIdOf, partScene } from '../render/build-scene.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
 import type { SceneItem } from '../render/scene.ts';
 import { createSheetRenderer, type SheetRenderer } from '../render/sheet-renderer.ts';
@@ -46,6 +46,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let overlay: ToolOverlay = NO_OVERLAY;
   let sceneDue = false;
   let scene: readonly SceneItem[] = [];
+  let active: readonly SceneItem[] = [];
 
   const zoom = () => views.getState().view.zoom;
   const balloons = (): Balloon[] => balloonsOf(scene, zoom());
@@ -66,7 +67,9 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       readOnly: state.readOnly,
       zoom: zoom(),
     });
-    renderer.showBase(scene);
+    const parts = partScene(scene);
+    active = parts.active;
+    renderer.showBase(parts.base);
     showOverlay();
   }
 
@@ -83,7 +86,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       pointer === null
         ? NO_OVERLAY
         : host.overlay(pointer.at, pointer.keys, { ...pointer.view, zoom: zoom() });
-    renderer.showOverlay(overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null));
+    const underPointer = overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null);
+    renderer.showActive([...active, ...underPointer]);
     options.onFollow(overlay.magnify && pointer !== null ? (overlay.snap?.at ?? pointer.at) : null);
   }
 

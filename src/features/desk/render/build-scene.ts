@@ -161,6 +161,20 @@ function noteItems(input: SceneInput): SceneMark[] {
   );
 }
 
+/**
+ * Parts a scene into what rests and what is being worked on: what is chosen or under way with its handles. Only the
+ * second changes from frame to frame while something is dragged.
+ */
+export function partScene(items: readonly SceneItem[]): { base: SceneItem[]; active: SceneItem[] } {
+  const base: SceneItem[] = [];
+  const active: SceneItem[] = [];
+  for (const item of items) {
+    const worked = item.strong || item.shape === 'handle' || item.shape === 'chosenHandle';
+    (worked ? active : base).push(item);
+  }
+  return { base, active };
+}
+
 /** The note whose balloon an item of the scene is. */
 export function noteIdOf(itemId: string): string {
   return itemId.slice(NOTE_PREFIX.length);

@@ -13,10 +13,17 @@ const TILE_REQUESTS = 4;
 /** Tiles beyond the view's edge that are fetched ahead of a pan. */
 const AHEAD_TILES = 1;
 
+/** Device pixels drawn beyond the view's edges: a drag by a hand's width then draws nothing. */
+const MARGIN_DEVICE_PX = 400;
+/** After a pan has rested for so long, what is drawn is centred again for the next one. */
+const REST_MS = 250;
+
 export type SheetRenderer = {
   setView(view: Viewport): void;
+  /** What rests: everything but what is being worked on. */
   showBase(items: readonly SceneItem[]): void;
-  showOverlay(items: readonly SceneItem[]): void;
+  /** What is being worked on: the chosen line, its handles, the band to the pointer. */
+  showActive(items: readonly SceneItem[]): void;
   /** A second, magnified view on the same tiles; `paint` is called again whenever a tile arrives. */
   addView(name: string, paint: () => void): { want(view: Viewport): void; end(): void };
   paintInto(context: CanvasRenderingContext2D, view: Viewport): void;
@@ -35,8 +42,9 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
   let view: Viewport | null = null;
   let scheduled = 0;
   let tilesDue = false;
-  let tracesDue = false;
-  let overlaid = false;
+  let baseDue = false;
+  let activeDue = false;
+  let restTimer: ReturnType<typeof setTimeout> | undefined;
 
   const store: TileStore<LoadedTile> = createTileStore({
     load: tileLoader(sheet),
@@ -49,7 +57,9 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
     },
   });
   const tiles = createTileLayer(host, sheet, store);
-  const traces = createTraceCanvas(host);
+  const base = createTraceCanvas(host, Math.round(MARGIN_DEVICE_PX / ratio()));
+  // Drawn in every frame of a drag, so it is no larger than the view.
+  const active = createTraceCanvas(host, 0);
 
   function schedule(): void {
     if (scheduled === 0) scheduled = requestAnimationFrame(drawFrame);
@@ -58,37 +68,38 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
   function drawFrame(): void {
     scheduled = 0;
     if (tilesDue) tiles.refresh();
-    if (tracesDue) traces.draw();
+    if (baseDue) base.draw();
+    if (activeDue) active.draw();
     tilesDue = false;
-    tracesDue = false;
+    baseDue = false;
+    activeDue = false;
   }
 
-  function traceAgain(): void {
-    tracesDue = true;
-    schedule();
+  function due(baseChanged: boolean, activeChanged: boolean): void {
+    baseDue ||= baseChanged;
+    activeDue ||= activeChanged;
+    if (view !== null && (baseDue || activeDue)) schedule();
+  }
+
+  const drawTexts = () => due(true, true);
+
+  function centreAtRest(): void {
+    clearTimeout(restTimer);
+    if (base.isOffCentre()) restTimer = setTimeout(() => due(true, false), REST_MS);
   }
 
   // A canvas takes a fallback font for one that is still loading, and does not draw again by itself.
-  fonts.addEventListener('loadingdone', traceAgain);
+  fonts.addEventListener('loadingdone', drawTexts);
 
   return {
     setView(next) {
       view = next;
-      store.want('main', wantedTiles(sheet, next, ratio(), AHEAD_TILES));
-      tiles.show(next);
-      if (!traces.show(next)) traceAgain();
+      if (tiles.show(next)) store.want('main', wantedTiles(sheet, next, ratio(), AHEAD_TILES));
+      due(base.show(next), active.show(next));
+      centreAtRest();
     },
-    showBase(items) {
-      traces.showBase(items);
-      if (view !== null) traceAgain();
-    },
-    showOverlay(items) {
-      // Without this a bare movement of the pointer would draw everything again.
-      if (items.length === 0 && !overlaid) return;
-      overlaid = items.length > 0;
-      traces.showOverlay(items);
-      traceAgain();
-    },
+    showBase: (items) => due(base.showItems(items), false),
+    showActive: (items) => due(false, active.showItems(items)),
     addView(name, paint) {
       extraViews.set(name, paint);
       return {
@@ -103,10 +114,12 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
     isWaiting: () => store.isWaiting(),
     destroy() {
       cancelAnimationFrame(scheduled);
-      fonts.removeEventListener('loadingdone', traceAgain);
+      clearTimeout(restTimer);
+      fonts.removeEventListener('loadingdone', drawTexts);
       store.close();
       tiles.destroy();
-      traces.destroy();
+      base.destroy();
+      active.destroy();
     },
   };
 }

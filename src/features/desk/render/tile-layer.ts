@@ -18,7 +18,8 @@ export const SQUARES_FROM_ZOOM = 4;
 const EMPTY_SHEET_COLOUR = '#f1eee4';
 
 export type TileLayer = {
-  show(view: Viewport): void;
+  /** Takes a view on; true when other tiles or other sizes are in sight than before. */
+  show(view: Viewport): boolean;
   /** A tile has come in: what stood in for it can go. */
   refresh(): void;
   destroy(): void;
@@ -72,9 +73,10 @@ export function createTileLayer(
       const y = Math.round(-next.origin[1] * next.zoom * devicePixelRatioNow()) / devicePixelRatioNow();
       paper.style.transform = `translate(${x}px, ${y}px)`;
       const key = layoutKey(sheet, next);
-      if (key === laidOut) return;
+      if (key === laidOut) return false;
       laidOut = key;
       layOut();
+      return true;
     },
     refresh: layOut,
     destroy: () => clip.remove(),
@@ -87,7 +89,7 @@ function layoutKey(sheet: TiledSheet, view: Viewport): string {
   const side = sheet.tiles.tileSizePx / levelScale(sheet, z);
   const [left, top, width, height] = seenFrame(view);
   const range = [left, top, left + width, top + height].map((edge) => Math.floor(edge / side));
-  return `${view.zoom} ${z} ${range.join(' ')}`;
+  return `${view.zoom} ${z} ${range.join(' ')} ${view.widthPx} ${view.heightPx}`;
 }
 
 /** Tiles in sight that are there; for each that is not, the nearest coarser one. Coarse ones first. */
