@@ -1,7 +1,8 @@
 import * as z from 'zod/mini';
 import { damAction, damRole } from './actions.ts';
 import { email, id, personRef, requiredText, shortText, timestamp } from './common.ts';
-import { unitSystem } from './document.ts';
+// Not from the document: the dams list is part of the first load and needs nothing else of it.
+import { unitSystem } from './unit-system.ts';
 
 const level = z.nullable(z.number().check(z.gte(-12_000), z.lte(30_000)));
 

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import { type UnitSystem, unitSystem } from './unit-system.ts';
 
 /**
  * The saved flow net: what the desk edits, the server keeps and the computation reads.
@@ -16,8 +17,7 @@ export const entityId = z.uuid();
 export const sheetPoint = z.tuple([z.number(), z.number()]);
 export type SheetPoint = z.infer<typeof sheetPoint>;
 
-export const unitSystem = z.enum(['SI', 'US']);
-export type UnitSystem = z.infer<typeof unitSystem>;
+export { type UnitSystem, unitSystem };
 
 const finite = z.number();
 const label = z.string().check(z.maxLength(120));

@@ -1,6 +1,6 @@
 import type { Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { openBrowser, type TestBrowser } from '#tests/support/browser.ts';
+import { openBrowser, PHONE, type TestBrowser } from '#tests/support/browser.ts';
 import { type RealServer, startRealServer } from '#tests/support/real-server.ts';
 import { addDam, addMember, addPerson, type TestPerson } from '#tests/support/test-people.ts';
 import { addFiles, answered, dropFile, scanOfSection, signIn } from './support.ts';
@@ -167,5 +167,30 @@ describe('a section', () => {
     for await (const chunk of await download.createReadStream()) chunks.push(chunk as Buffer);
     expect(Buffer.concat(chunks).equals(await scanOfSection('first.jpg'))).toBe(true);
     expect(download.suggestedFilename()).toBe('first.jpg');
+  });
+});
+
+describe('a phone', () => {
+  it('adds a drawing from its camera, and everything to press is large enough for a finger', async () => {
+    const phone = await browser.newPage({ viewport: PHONE, hasTouch: true, isMobile: true });
+    await phone.goto(`/dams/${damId}`);
+    await signIn(phone, iris);
+    const [chooser] = await Promise.all([
+      phone.waitForEvent('filechooser'),
+      phone.getByRole('button', { name: 'Take a photo' }).tap(),
+    ]);
+    expect(await chooser.element().getAttribute('capture')).toBe('environment');
+    await chooser.setFiles([await jpeg('photo.jpg')]);
+    await phone.getByRole('table', { name: 'photo.jpg', exact: true }).waitFor();
+    const small = await phone.evaluate(() =>
+      [...document.querySelectorAll('button, select, input:not([type=file], [type=checkbox])')]
+        .filter((each) => each.getClientRects().length > 0 && each.getBoundingClientRect().height < 40)
+        .map((each) => each.textContent),
+    );
+    expect(small).toEqual([]);
+    const overflow = await phone.evaluate(
+      () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
+    );
+    expect(overflow).toBeLessThanOrEqual(0);
   });
 });

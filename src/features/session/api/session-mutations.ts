@@ -34,7 +34,6 @@ export const useAcceptInvitation = () =>
     sendJson('POST', '/invitations/accept', sessionDto, { body }),
   );
 
-export const useSignOut = () => useMutation({ mutationFn: () => send('DELETE', '/session') });
 export const useEndAllSessions = () => useMutation({ mutationFn: () => send('POST', '/session/end-all') });
 
 export const useRequestReset = () =>

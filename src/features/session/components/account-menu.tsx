@@ -3,16 +3,13 @@ import { Menu, menuItemClass } from '#client/components/menu.tsx';
 import { initialsOf } from '#client/lib/initials.ts';
 import { paths } from '#client/lib/paths.ts';
 import { sessionText as text } from '#client/text/session.ts';
-import { useSignOut } from '../api/session-mutations.ts';
+import { signOut } from '../api/sign-out.ts';
 import { useSession } from '../hooks/use-session.ts';
 
 /** The initials at the right of the top bar and what lies behind them. */
 export function AccountMenu() {
   const session = useSession();
-  const signOut = useSignOut();
   if (!session.person) return null;
-  // A full load of the sign-in page leaves nothing of this person in memory.
-  const leave = () => signOut.mutate(undefined, { onSettled: () => window.location.assign(paths.signIn) });
   const { person } = session;
   return (
     <Menu
@@ -36,7 +33,7 @@ export function AccountMenu() {
           {session.outboxReadable || session.can.includes('mail.read') ? (
             <MenuLink to={paths.mails} label={text.mails} onClick={close} />
           ) : null}
-          <button type="button" className={menuItemClass} onClick={leave}>
+          <button type="button" className={menuItemClass} onClick={signOut}>
             {text.signOut}
           </button>
         </>
