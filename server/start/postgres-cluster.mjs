@@ -3,14 +3,12 @@ import path from 'node:path';
 import { readJson, writeFileSafely } from './kept-file.mjs';
 import { faults, say } from './messages.mjs';
 import { startFiles } from './paths.mjs';
-import { freeLoopbackPort } from './ports.mjs';
 import { ensurePostgres } from './postgres-find.mjs';
+import { startPostmaster, stopPostmaster } from './postgres-postmaster.mjs';
 import { prepareRoles } from './postgres-roles.mjs';
 import { clusterFolders, makeClusterFolder, postgresUser } from './postgres-user.mjs';
 import { lastLines, runCommand } from './run-command.mjs';
 import { makeSecrets, readSecrets } from './secrets.mjs';
-
-const START_SECONDS = 60;
 
 /**
  * @typedef {object} RunningCluster
@@ -116,72 +114,6 @@ function initdbArgs(folder, passwordFile) {
     '--locale=C.UTF-8',
     '--data-checksums',
   ];
-}
-
-/**
- * @param {{binDir: string, dataDir: string}} cluster
- * @param {import('./postgres-user.mjs').SystemUser | null} user
- * @param {number | null} rememberedPort
- * @param {string[]} settings
- */
-async function startPostmaster({ binDir, dataDir }, user, rememberedPort, settings) {
-  const pgCtl = path.join(binDir, 'pg_ctl');
-  const status = await runCommand(pgCtl, ['status', '-D', dataDir], { user, cwd: '/' });
-  if (status.code === 0) return { port: portOfRunning(dataDir), startedHere: false };
-  const port = await freeLoopbackPort(rememberedPort);
-  writeFileSync(path.join(dataDir, 'tracehead.conf'), configuration(port, settings));
-  const log = path.join(dataDir, 'start.log');
-  rmSync(log, { force: true });
-  const args = ['start', '-w', '-t', String(START_SECONDS), '-D', dataDir, '-l', log];
-  // A group of its own: Ctrl-C in the terminal must reach the server first and the database last.
-  const start = await runCommand(pgCtl, args, { user, cwd: '/', detached: true });
-  if (start.code !== 0) throw brokenFault(dataDir, reasonIn(log, start.output));
-  return { port, startedHere: true };
-}
-
-/** A full disk is no broken database, and moving it away would be the wrong advice. @param {string} dataDir @param {string} reason */
-export function brokenFault(dataDir, reason) {
-  return /No space left on device/.test(reason)
-    ? faults.noSpaceLeft(dataDir)
-    : faults.clusterBroken(dataDir, reason);
-}
-
-/** Line 4 of postmaster.pid is the port. @param {string} dataDir */
-function portOfRunning(dataDir) {
-  return Number(readFileSync(path.join(dataDir, 'postmaster.pid'), 'utf8').split('\n')[3]);
-}
-
-/** @param {number} port @param {string[]} settings */
-function configuration(port, settings) {
-  return [
-    '# Written at each start; changes made here are lost.',
-    `port = ${port}`,
-    "listen_addresses = '127.0.0.1'",
-    "unix_socket_directories = ''",
-    "log_timezone = 'UTC'",
-    "timezone = 'UTC'",
-    'logging_collector = on',
-    "log_filename = 'postgresql-%a.log'",
-    'log_truncate_on_rotation = on',
-    'log_rotation_age = 1d',
-    ...settings,
-    '',
-  ].join('\n');
-}
-
-/** The server's own word for why it did not start, without its timestamp. @param {string} log @param {string} fallback */
-export function reasonIn(log, fallback) {
-  const text = existsSync(log) ? readFileSync(log, 'utf8') : '';
-  const fatal = text.split('\n').filter((line) => /(FATAL|PANIC):/.test(line));
-  const reason = fatal.at(-1)?.replace(/^.*?(FATAL|PANIC):\s*/, '');
-  return `${reason ?? lastLines(text.trim() ? text : fallback)}.`.replace(/\.\.$/, '.');
-}
-
-/** @param {{binDir: string, dataDir: string}} cluster @param {import('./postgres-user.mjs').SystemUser | null} user */
-async function stopPostmaster({ binDir, dataDir }, user) {
-  // "fast" ends sessions that are still open, after rolling back what they had not committed.
-  const args = ['stop', '-w', '-t', String(START_SECONDS), '-m', 'fast', '-D', dataDir];
-  await runCommand(path.join(binDir, 'pg_ctl'), args, { user, cwd: '/', detached: true });
 }
 
 /** Addresses for the owner, who runs migrations, and for the role the server uses. @param {{port: number, secrets: import('./secrets.mjs').Secrets}} cluster @param {string} [database] */
