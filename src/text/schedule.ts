@@ -31,7 +31,8 @@ export const scheduleText = {
   elevationOf: (name: string) => `Elevation of ${name}`,
   unnamed: 'unnamed point',
   show: 'How counted',
-  showFor: (name: string) => `How the drops lost at ${name} were counted`,
+  /** What the button shows comes first in its name, so that it can be said to be pressed. */
+  named: (shown: string, name: string) => `${shown}: ${name}`,
   hide: 'Close',
   remove: 'Remove point',
   abovePhreatic: 'above the phreatic line, suction left out',

@@ -8,6 +8,7 @@ const PANES = ['sheet', 'schedule', 'notes', 'check'] as const;
 export type CheckPane = (typeof PANES)[number];
 
 interface CheckGridProps {
+  heading: string;
   sheet: ReactNode;
   schedule: ReactNode;
   notes: ReactNode;
@@ -20,7 +21,12 @@ interface CheckGridProps {
 
 /** Sheet and schedule as on the desk; in the margin the check, the notes and the title block. */
 export function CheckGrid(props: CheckGridProps) {
-  return props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />;
+  return (
+    <main id="content" className="flex min-h-0 flex-1 flex-col">
+      <h1 className="sr-only">{props.heading}</h1>
+      {props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />}
+    </main>
+  );
 }
 
 /** With room for three columns the check stands at the left, where the tools are on the desk. */
@@ -32,7 +38,7 @@ function WideGrid({ sheet, schedule, notes, block, check }: CheckGridProps) {
     ? 'grid-cols-[270px_minmax(0,1fr)_340px] xl:grid-cols-[280px_minmax(0,1fr)_372px]'
     : 'grid-cols-[minmax(0,1fr)_320px]';
   return (
-    <main id="content" className={`grid min-h-0 flex-1 grid-rows-[minmax(0,1fr)_232px] ${columns}`}>
+    <div className={`grid min-h-0 flex-1 grid-rows-[minmax(0,1fr)_232px] ${columns}`}>
       {roomy ? (
         <div className="row-span-2 min-h-0 overflow-y-auto border-r border-rule bg-film">{check}</div>
       ) : null}
@@ -45,7 +51,7 @@ function WideGrid({ sheet, schedule, notes, block, check }: CheckGridProps) {
         <div className="max-h-[60%] shrink-0 overflow-y-auto">{block}</div>
       </aside>
       <div className="min-h-0 min-w-0 border-t border-rule">{schedule}</div>
-    </main>
+    </div>
   );
 }
 
@@ -53,7 +59,7 @@ function NarrowGrid({ sheet, schedule, notes, block, check, pane, onPane }: Chec
   const place = (own: CheckPane) =>
     classNames('col-start-1 row-start-1 flex min-h-0 min-w-0 flex-col', pane !== own && 'invisible');
   return (
-    <main id="content" className="flex min-h-0 flex-1 flex-col">
+    <>
       <div className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)] grid-rows-[minmax(0,1fr)]">
         <div className={place('sheet')}>{sheet}</div>
         <div className={place('schedule')}>{schedule}</div>
@@ -64,6 +70,6 @@ function NarrowGrid({ sheet, schedule, notes, block, check, pane, onPane }: Chec
         </div>
       </div>
       <PaneSwitch panes={PANES} names={text.panes} pane={pane} onPane={onPane} />
-    </main>
+    </>
   );
 }

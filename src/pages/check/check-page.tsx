@@ -15,6 +15,7 @@ import { commonText } from '#client/text/common.ts';
 import { deskPageText } from '#client/text/desk-page.ts';
 import { checkText as text } from '#client/text/revisions.ts';
 import type { RevisionDto } from '#shared/contract/revisions.ts';
+import { sectionLabel } from '#shared/text/section-title.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { CheckGrid, type CheckPane } from './check-grid.tsx';
 import { FrozenSchedule } from './frozen-schedule.tsx';
@@ -39,7 +40,7 @@ function Check({ revision }: { revision: RevisionDto }) {
   const notes = useFrozenNotes(revision, store);
   const history = useQuery(revisionListQuery(payload.netId)).data ?? [summary];
   useCheckLive(revision);
-  const section = deskPageText.sectionAt(payload.section.name, payload.section.chainage);
+  const section = sectionLabel(payload.section);
   const drawing = deskPageText.drawingRevision(
     payload.drawing.number || deskPageText.untitledDrawing,
     payload.drawing.revision,
@@ -57,6 +58,7 @@ function Check({ revision }: { revision: RevisionDto }) {
         end={<ButtonLink to={paths.net(payload.netId)}>{text.openNet}</ButtonLink>}
       >
         <CheckGrid
+          heading={`${text.heading(summary.label)}, ${section}`}
           narrow={narrow}
           pane={pane}
           onPane={setPane}

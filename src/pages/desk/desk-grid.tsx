@@ -7,6 +7,8 @@ export type DeskPane = 'sheet' | 'schedule' | 'notes' | 'block';
 const PANES: readonly DeskPane[] = ['sheet', 'schedule', 'notes', 'block'];
 
 interface DeskGridProps {
+  /** What the page is about, for those who cannot see the trail. */
+  heading: string;
   tools: ReactNode;
   lines: ReactNode;
   sheet: ReactNode;
@@ -25,15 +27,17 @@ interface DeskGridProps {
  * keeps its view.
  */
 export function DeskGrid(props: DeskGridProps) {
-  return props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />;
+  return (
+    <main id="content" className="flex min-h-0 flex-1 flex-col">
+      <h1 className="sr-only">{props.heading}</h1>
+      {props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />}
+    </main>
+  );
 }
 
 function WideGrid({ tools, lines, sheet, schedule, notes, block }: DeskGridProps) {
   return (
-    <main
-      id="content"
-      className="grid min-h-0 flex-1 grid-cols-[168px_minmax(0,1fr)_320px] grid-rows-[minmax(0,1fr)_232px] lg:grid-cols-[188px_minmax(0,1fr)_340px] xl:grid-cols-[188px_minmax(0,1fr)_372px]"
-    >
+    <div className="grid min-h-0 flex-1 grid-cols-[168px_minmax(0,1fr)_320px] grid-rows-[minmax(0,1fr)_232px] lg:grid-cols-[188px_minmax(0,1fr)_340px] xl:grid-cols-[188px_minmax(0,1fr)_372px]">
       <div className="row-span-2 flex min-h-0 flex-col border-r border-rule">{tools}</div>
       <div className="flex min-h-0 min-w-0 flex-col">
         {lines}
@@ -44,7 +48,7 @@ function WideGrid({ tools, lines, sheet, schedule, notes, block }: DeskGridProps
         <div className="max-h-[60%] shrink-0 overflow-y-auto">{block}</div>
       </aside>
       <div className="min-h-0 min-w-0 border-t border-rule">{schedule}</div>
-    </main>
+    </div>
   );
 }
 
@@ -52,7 +56,7 @@ function NarrowGrid({ tools, lines, sheet, schedule, notes, block, pane, onPane 
   const place = (own: DeskPane) =>
     classNames('col-start-1 row-start-1 flex min-h-0 min-w-0 flex-col', pane !== own && 'invisible');
   return (
-    <main id="content" className="flex min-h-0 flex-1 flex-col">
+    <>
       {lines}
       <div className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)] grid-rows-[minmax(0,1fr)]">
         <div className={place('sheet')}>
@@ -64,6 +68,6 @@ function NarrowGrid({ tools, lines, sheet, schedule, notes, block, pane, onPane 
         <div className={classNames(place('block'), 'overflow-y-auto bg-film')}>{block}</div>
       </div>
       <PaneSwitch panes={PANES} names={text.panes} pane={pane} onPane={onPane} />
-    </main>
+    </>
   );
 }

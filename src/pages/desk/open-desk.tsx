@@ -23,6 +23,7 @@ import { commonText } from '#client/text/common.ts';
 import { deskPageText as text } from '#client/text/desk-page.ts';
 import { sendingText } from '#client/text/revisions.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
+import { sectionLabel } from '#shared/text/section-title.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { DeskGrid } from './desk-grid.tsx';
 import { DeskTitleBlock } from './desk-title-block.tsx';
@@ -58,7 +59,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
   useSavingMoments(saving);
 
   const { section, drawing, sheet } = detail;
-  const sectionName = text.sectionAt(section.name, section.chainage);
+  const sectionName = sectionLabel(section);
   const drawingName = text.drawingRevision(drawing.number || text.untitledDrawing, drawing.revision);
   const closeForm = () => {
     close();
@@ -88,6 +89,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
         }
       >
         <DeskGrid
+          heading={`${sectionName}, ${detail.net.name}`}
           narrow={narrow}
           pane={pane}
           onPane={setPane}

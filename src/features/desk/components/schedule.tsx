@@ -140,7 +140,7 @@ function Row({ point, document, unfinished, onEdit, selected, onSelect, open, on
         <button
           type="button"
           aria-expanded={open}
-          aria-label={text.showFor(name)}
+          aria-label={text.named(open ? text.hide : text.show, name)}
           className="touch text-sm text-ink-2 underline decoration-rule underline-offset-2 hover:text-ink"
           onClick={onToggle}
         >

@@ -65,7 +65,6 @@ function PaletteButton({ store, tool, column }: { store: DeskStore; tool: Palett
       type="button"
       disabled={readOnly && tool !== 'note' && tool !== 'waterLevels'}
       aria-pressed={tool === 'waterLevels' ? undefined : inHand}
-      aria-label={text.tools[tool]}
       aria-keyshortcuts={letter}
       onClick={choose}
       className={classNames(
@@ -76,7 +75,12 @@ function PaletteButton({ store, tool, column }: { store: DeskStore; tool: Palett
     >
       <ToolIcon tool={tool} />
       {text.tools[tool]}
-      {column && <kbd className="ml-auto font-sans text-xs font-normal text-ink-2">{letter}</kbd>}
+      {column && (
+        // The key is told by aria-keyshortcuts; as part of the name it would be read as a word.
+        <kbd aria-hidden="true" className="ml-auto font-sans text-xs font-normal text-ink-2">
+          {letter}
+        </kbd>
+      )}
     </button>
   );
 }
