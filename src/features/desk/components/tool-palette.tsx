@@ -77,9 +77,9 @@ function PaletteButton({ store, tool, column }: { store: DeskStore; tool: Palett
       {text.tools[tool]}
       {column && (
         // The key is told by aria-keyshortcuts; as part of the name it would be read as a word.
-        <kbd aria-hidden="true" className="ml-auto font-sans text-xs font-normal text-ink-2">
+        <span aria-hidden="true" className="ml-auto text-xs font-normal text-ink-2">
           {letter}
-        </kbd>
+        </span>
       )}
     </button>
   );
