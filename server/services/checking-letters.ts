@@ -3,8 +3,8 @@ import type { Figures } from '#server/mail/templates/letter.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 import type { RevisionPayload } from '#shared/contract/revisions.ts';
 import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
+import { sectionLabel } from '#shared/text/section-title.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
-import { sectionTitle } from './net-place.ts';
 
 /** Rows of figures in a mail; a longer schedule is for the page. */
 const MOST_ROWS = 30;
@@ -15,9 +15,7 @@ export function revisionFacts({ dam, drawing, section, netName, label }: Revisio
   return {
     damName: dam.name,
     drawing: [number || title || 'drawing', revision && `rev ${revision}`].filter(Boolean).join(' '),
-    section: section.chainage
-      ? `${sectionTitle(section)}, chainage ${section.chainage}`
-      : sectionTitle(section),
+    section: sectionLabel(section),
     netName,
     revision: label,
   };

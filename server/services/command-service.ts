@@ -7,10 +7,11 @@ import type { Actor } from '#server/http/route-record.ts';
 import type { LivePort } from '#server/live/live-port.ts';
 import { SINGLE_KINDS } from '#shared/contract/document.ts';
 import type { CommandBatch, CommandResult } from '#shared/contract/nets.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { faultsOf, type HeldEntity, isSectionKind, type JudgedOp, judgeOps } from './command-ops.ts';
 import { writeEvent } from './event-writer.ts';
 import { type LockedNet, lockNet, lockNetsOfSection, lockSectionOfNet } from './net-locks.ts';
-import { type NetPlace, placeOfNet, refusePutAway, sectionTitle } from './net-place.ts';
+import { type NetPlace, placeOfNet, refusePutAway } from './net-place.ts';
 import { personRefs } from './person-refs.ts';
 
 export interface CommandServiceDeps {
@@ -133,7 +134,7 @@ export function createCommandService({ manager, clock, live }: CommandServiceDep
       netId: net.id,
       personId: actor.id,
       type: 'net.changed',
-      text: `${label || 'changed the net'} on ${sectionTitle(section)}, ${net.name}`,
+      text: `${label || 'changed the net'} on ${sectionTitle(section.name)}, ${net.name}`,
       detail: { changeNumber: number },
     });
     for (const each of nets)

@@ -72,8 +72,3 @@ export function refusePutAway(place: SheetPlace & Partial<NetPlace>, status: 409
   const refusal = putAwayRefusal(place, status);
   if (refusal) throw refusal;
 }
-
-/** "Section B–B" for a section named "B–B"; a name that already says so is left alone. */
-export function sectionTitle(section: { name: string }): string {
-  return /^section\b/i.test(section.name) ? section.name : `Section ${section.name}`;
-}

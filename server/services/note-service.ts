@@ -7,9 +7,10 @@ import type { Clock } from '#server/http/clock.ts';
 import type { Actor } from '#server/http/route-record.ts';
 import type { LivePort } from '#server/live/live-port.ts';
 import type { answerInput, NoteDto, noteInput } from '#shared/contract/notes.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { writeEvent } from './event-writer.ts';
 import { lockNet } from './net-locks.ts';
-import { type NetPlace, placeOfNet, refusePutAway, sectionTitle } from './net-place.ts';
+import { type NetPlace, placeOfNet, refusePutAway } from './net-place.ts';
 import { refuseTakenId } from './new-id.ts';
 import { noteById } from './note-queries.ts';
 
@@ -49,7 +50,7 @@ export function createNoteService({ manager, clock, live }: NoteServiceDeps) {
     verb: keyof typeof EVENT_OF,
   ): Promise<void> {
     const about = { damId: dam.id, drawingId: drawing.id, netId: net.id, personId: actor.id };
-    const text = `${verb} note ${note.number} on ${sectionTitle(section)}, ${net.name}`;
+    const text = `${verb} note ${note.number} on ${sectionTitle(section.name)}, ${net.name}`;
     await writeEvent(manager, {
       ...about,
       type: `note.${EVENT_OF[verb]}`,

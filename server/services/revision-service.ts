@@ -9,11 +9,12 @@ import type { Actor } from '#server/http/route-record.ts';
 import { decidedMail } from '#server/mail/templates/checking-mails.ts';
 import type { DecisionRefusal } from '#server/policies/revision-policy.ts';
 import type { decisionInput, RevisionPayload } from '#shared/contract/revisions.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { revisionFacts } from './checking-letters.ts';
 import { writeEvent } from './event-writer.ts';
 import { queueMail } from './mail-service.ts';
 import { lockNet } from './net-locks.ts';
-import { placeOfNet, refusePutAway, sectionTitle } from './net-place.ts';
+import { placeOfNet, refusePutAway } from './net-place.ts';
 import { personState } from './person-state.ts';
 import { decisionRefusalFor, openRevision } from './revision-queries.ts';
 import type { ServiceDeps } from './service-deps.ts';
@@ -92,7 +93,7 @@ export function createRevisionService(deps: RevisionServiceDeps) {
       netId,
       personId: actor.id,
       type: `revision.${decision}`,
-      text: `${decision} revision ${label} of ${sectionTitle(section)}, ${netName}`,
+      text: `${decision} revision ${label} of ${sectionTitle(section.name)}, ${netName}`,
       detail: { revisionId },
     });
     await live.publish(manager, { type: 'revisions', damId: dam.id, netId });

@@ -3,8 +3,9 @@ import { AppError } from '#server/errors/app-error.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { readDocument } from './net-document.ts';
-import { type NetPlace, placeOfNet, sectionTitle } from './net-place.ts';
+import { type NetPlace, placeOfNet } from './net-place.ts';
 import { createReadingCache } from './reading-cache.ts';
 import { readInThread } from './reading-threads.ts';
 
@@ -65,7 +66,7 @@ export async function documentFile(manager: EntityManager, netId: string): Promi
 
 /** Drawing, section and net, without the characters that file systems keep for themselves. */
 function fileNameOf({ drawing, section, net }: NetPlace, extension: string): string {
-  const words = [drawing.number, sectionTitle(section), net.name].filter(Boolean).join(' ');
+  const words = [drawing.number, sectionTitle(section.name), net.name].filter(Boolean).join(' ');
   const safe = words
     .replaceAll(/[\\/:*?"<>|\p{Cc}]/gu, '-')
     .replaceAll(/\s+/g, ' ')

@@ -7,8 +7,9 @@ import type { Actor } from '#server/http/route-record.ts';
 import type { LivePort } from '#server/live/live-port.ts';
 import type { SectionDto } from '#shared/contract/drawings.ts';
 import type { sectionInput, sectionPatch } from '#shared/contract/nets.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { writeEvent } from './event-writer.ts';
-import { placeOfSection, placeOfSheet, refusePutAway, type SheetPlace, sectionTitle } from './net-place.ts';
+import { placeOfSection, placeOfSheet, refusePutAway, type SheetPlace } from './net-place.ts';
 import { firstSectionEntities, newEntityRows } from './net-singles.ts';
 import { refuseTakenId } from './new-id.ts';
 import { sectionById } from './section-queries.ts';
@@ -32,7 +33,7 @@ export function createSectionService({ manager, clock, live }: SectionServiceDep
     const place = await placeOfSection(manager, sectionId);
     if ((place.section.archivedAt === null) !== (archivedAt === null)) {
       await manager.update(SectionEntity, { id: sectionId }, { archivedAt });
-      const title = sectionTitle(place.section);
+      const title = sectionTitle(place.section.name);
       await (archivedAt
         ? announce(place, actor, 'section.archived', `put ${title} away`)
         : announce(place, actor, 'section.restored', `brought ${title} back`));
@@ -52,7 +53,7 @@ export function createSectionService({ manager, clock, live }: SectionServiceDep
       const making = { personId: actor.id, changeNumber: 0, at };
       const rows = newEntityRows({ sectionId: input.id }, firstSectionEntities(), making);
       await manager.insert(DocumentEntityRow, rows as QueryDeepPartialEntity<DocumentEntityRow>[]);
-      await announce(place, actor, 'section.created', `added ${sectionTitle(input)}`);
+      await announce(place, actor, 'section.created', `added ${sectionTitle(input.name)}`);
       return sectionById(manager, input.id);
     },
 
@@ -62,7 +63,7 @@ export function createSectionService({ manager, clock, live }: SectionServiceDep
       refuseBadFrame(patch.frame ?? null, place);
       if (Object.keys(patch).length > 0) {
         await manager.update(SectionEntity, { id: sectionId }, patch);
-        const title = sectionTitle({ name: patch.name ?? place.section.name });
+        const title = sectionTitle(patch.name ?? place.section.name);
         await announce(place, actor, 'section.changed', `changed the name or frame of ${title}`);
       }
       return sectionById(manager, sectionId);

@@ -6,13 +6,14 @@ import { sentForCheckingMail } from '#server/mail/templates/checking-mails.ts';
 import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
 import type { PersonRef } from '#shared/contract/common.ts';
 import type { RevisionPayload, RevisionSummary, sendInput } from '#shared/contract/revisions.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { revisionFacts, scheduleFigures } from './checking-letters.ts';
 import { writeEvent } from './event-writer.ts';
 import { queueMail } from './mail-service.ts';
 import { readDocument } from './net-document.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { lockNet } from './net-locks.ts';
-import { type NetPlace, placeOfNet, sectionTitle } from './net-place.ts';
+import { type NetPlace, placeOfNet } from './net-place.ts';
 import { refuseTakenId } from './new-id.ts';
 import { readInThread } from './reading-threads.ts';
 import { revisionLabel } from './revision-label.ts';
@@ -109,7 +110,7 @@ export function createSendingService(deps: SendingDeps) {
       netId,
       personId: actor.id,
       type: 'revision.sent',
-      text: `sent revision ${label} of ${sectionTitle(place.section)}, ${place.net.name}, to ${reviewer.name} for checking`,
+      text: `sent revision ${label} of ${sectionTitle(place.section.name)}, ${place.net.name}, to ${reviewer.name} for checking`,
       detail: { revisionId },
     });
     await live.publish(manager, { type: 'revisions', damId, netId });

@@ -1,7 +1,8 @@
 import type { EntityManager } from 'typeorm';
 import type { WaitingDto } from '#shared/contract/dams.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { drawingTitle } from './drawing-title.ts';
-import { placeOfNet, sectionTitle } from './net-place.ts';
+import { placeOfNet } from './net-place.ts';
 import { readingIfAny } from './schedule-queries.ts';
 
 export type WaitingItem = WaitingDto['items'][number];
@@ -44,7 +45,7 @@ const NET_COLUMNS = `d.id AS dam_id, d.name AS dam_name, w.id AS drawing_id, w.n
 /** The reader started the net or changed it. */
 const DREW = `(n.created_by = $1 OR EXISTS (SELECT 1 FROM command_batch b WHERE b.net_id = n.id AND b.person_id = $1))`;
 
-const titleOf = (row: NetRow) => `${sectionTitle({ name: row.section_name })}, ${row.net_name}`;
+const titleOf = (row: NetRow) => `${sectionTitle(row.section_name)}, ${row.net_name}`;
 
 function itemOf(
   kind: WaitingItem['kind'],
@@ -116,7 +117,7 @@ async function toAnswer(manager: EntityManager, personId: string): Promise<Waiti
 }
 
 function notesText({ to_answer: open, answered, section_name: name }: NotesRow): string {
-  const on = sectionTitle({ name });
+  const on = sectionTitle(name);
   if (open > 0) return `Answer ${open === 1 ? 'a note' : `${open} notes`} on ${on}`;
   return `Read the answer to ${answered === 1 ? 'your note' : `${answered} notes of yours`} on ${on}`;
 }

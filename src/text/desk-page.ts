@@ -1,8 +1,5 @@
 /** Words of the desk as a page. */
 export const deskPageText = {
-  /** The section as it is named on the drawing: "Section B–B", "Spillway axis". */
-  sectionAt: (section: string, chainage: string) =>
-    chainage === '' ? section : `${section}, chainage ${chainage}`,
   drawingRevision: (number: string, revision: string) =>
     revision === '' ? number : `${number} rev ${revision}`,
   untitledDrawing: 'Drawing',

@@ -1,19 +1,7 @@
-import type { DrawingDto, NetSummary, RenderJobDto, SectionDto } from '#shared/contract/drawings.ts';
+import type { DrawingDto, NetSummary, RenderJobDto } from '#shared/contract/drawings.ts';
 
 const plural = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
 const MB = 1024 * 1024;
-
-/** "Section B–B" for a section letter, the name itself when it says more: "Spillway axis". */
-export function sectionTitle(name: string): string {
-  return /^[A-Z0-9]{1,3}(\s*[–-]\s*[A-Z0-9]{1,3}[′']?)?$/i.test(name) ? `Section ${name}` : name;
-}
-
-/** "Section B–B, chainage 212". */
-export function sectionLabel(section: Pick<SectionDto, 'name' | 'chainage'>): string {
-  const place = /^[0-9+.,\s]+$/.test(section.chainage) ? `chainage ${section.chainage}` : section.chainage;
-  const saysSo = section.name.toLowerCase().includes(section.chainage.toLowerCase());
-  return [sectionTitle(section.name), saysSo ? '' : place].filter(Boolean).join(', ');
-}
 
 /** "HF-114 rev C", or the file's name until the drawing has a number. */
 export function drawingName(drawing: Pick<DrawingDto, 'number' | 'revision' | 'fileName'>): string {

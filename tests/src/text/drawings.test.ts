@@ -1,17 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { byteText, drawingName, sectionLabel } from '#client/text/drawings.ts';
-
-describe('the name of a section', () => {
-  it.each([
-    ['B–B', '212', 'Section B–B, chainage 212'],
-    ['A', '', 'Section A'],
-    ['C-C', '0+305', 'Section C-C, chainage 0+305'],
-    ['Spillway axis', 'axis', 'Spillway axis'],
-    ['Section B–B', '212', 'Section B–B, chainage 212'],
-  ])('%j at %j is %j', (name, chainage, label) => {
-    expect(sectionLabel({ name, chainage })).toBe(label);
-  });
-});
+import { byteText, drawingName } from '#client/text/drawings.ts';
 
 describe('the name of a drawing', () => {
   it.each([

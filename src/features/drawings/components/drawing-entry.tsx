@@ -7,10 +7,10 @@ import {
   drawingName,
   jobText,
   netStateText,
-  sectionLabel,
   drawingsText as text,
 } from '#client/text/drawings.ts';
 import type { DrawingDto, NetSummary, SectionDto } from '#shared/contract/drawings.ts';
+import { sectionLabel } from '#shared/text/section-title.ts';
 import { isUnderWay } from '../api/drawing-queries.ts';
 import { Thumbnail } from './thumbnail.tsx';
 

@@ -1,6 +1,7 @@
 import { type PointerEvent, useState } from 'react';
-import { sectionTitle, drawingsText as text } from '#client/text/drawings.ts';
+import { drawingsText as text } from '#client/text/drawings.ts';
 import type { SectionDto, SheetDto } from '#shared/contract/drawings.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 import { type Frame, frameBetween, sheetPointAt } from './frame.ts';
 import { percent, SheetPicture } from './sheet-picture.tsx';
 
