@@ -17,7 +17,7 @@ export function PointerReadout({ store }: { store: DeskStore }) {
   if (at === null) return null;
   const words = wordsAt(at, document, setOut);
   return (
-    <output data-over-sheet className="flex gap-4 rounded-sheet border border-rule bg-film px-2.5 py-1">
+    <div data-over-sheet className="flex gap-4 rounded-sheet border border-rule bg-film px-2.5 py-1">
       {words === null ? (
         <span>{text.pixels(at[0], at[1])}</span>
       ) : (
@@ -26,7 +26,7 @@ export function PointerReadout({ store }: { store: DeskStore }) {
           <span>{text.elevation(words)}</span>
         </>
       )}
-    </output>
+    </div>
   );
 }
 

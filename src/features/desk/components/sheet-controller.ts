@@ -4,6 +4,7 @@ import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
+import type { SheetFrame } from '../model/viewport.ts';
 import { buildScene, type NoteBalloon, noteIdOf, partScene } from '../render/build-scene.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
 import type { SceneItem } from '../render/scene.ts';
@@ -20,6 +21,7 @@ export type SheetControllerOptions = {
   /** Under everything else in the element: the canvases go in here. */
   readonly layers: HTMLElement;
   readonly sheet: SheetDto;
+  readonly frame: SheetFrame | null;
   readonly store: DeskStore;
   readonly views: ViewStore;
   notes(): readonly NoteBalloon[];
@@ -66,6 +68,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       map: host.map(),
       readOnly: state.readOnly,
       zoom: zoom(),
+      frame: options.frame,
     });
     const parts = partScene(scene);
     active = parts.active;

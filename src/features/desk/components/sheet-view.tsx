@@ -34,6 +34,8 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
   const element = useRef<HTMLDivElement>(null);
   const layers = useRef<HTMLDivElement>(null);
   const shownNotes = useRef(notes);
+  // The frame comes as a new array with every answer of the server; the view keeps the one it was made with.
+  const outline = useRef(frame);
   const [views] = useState(() => createViewStore(sheet, frame));
   const [controller, setController] = useState<SheetController | null>(null);
   const [follow, setFollow] = useState<SheetPx | null>(null);
@@ -47,6 +49,7 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       element: element.current,
       layers: layers.current,
       sheet,
+      frame: outline.current,
       store,
       views,
       notes: () => shownNotes.current,

@@ -9,7 +9,7 @@ import type { DeskState, DeskStore } from '../model/desk-state.ts';
 export function ToolHint({ store }: { store: DeskStore }) {
   const sentences = useStore(store, hintOf);
   return (
-    <div className="mx-4 mt-3 min-h-[92px] text-sm text-ink-2">
+    <div role="status" className="mx-4 mt-3 min-h-[92px] text-sm text-ink-2">
       {sentences.split('\n').map((sentence) => (
         <p key={sentence} className="m-0 mb-1.5">
           {sentence}

@@ -5,6 +5,7 @@ import type { NetReading } from '#shared/contract/reading.ts';
 import { fixedText, plainText } from '#shared/text/number-text.ts';
 import type { HideableKind } from '../model/desk-state.ts';
 import type { Selection } from '../model/selection.ts';
+import type { SheetFrame } from '../model/viewport.ts';
 import { COLOURS, lookOf, unfinishedLook } from './line-look.ts';
 import { placeWords } from './place-words.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
@@ -29,6 +30,8 @@ export type SceneInput = {
   readonly map: SectionMap | null;
   readonly readOnly: boolean;
   readonly zoom: number;
+  /** The section's part of the sheet, outlined when the sheet holds more; null = the whole sheet. */
+  readonly frame: SheetFrame | null;
 };
 
 type Shown = { readonly id: string; readonly value: DocumentEntity };
@@ -42,6 +45,7 @@ export function buildScene(input: SceneInput): SceneItem[] {
   const lines = shown.flatMap((entity) => lineItem(entity, input));
   lines.sort((a, b) => Number(a.strong) - Number(b.strong));
   const items = [
+    ...frameItem(input.frame),
     ...lines,
     ...labelItems(lines, input),
     ...shown.flatMap((entity) => pointItem(entity, input)),
@@ -50,6 +54,20 @@ export function buildScene(input: SceneInput): SceneItem[] {
     ...noteItems(input),
   ];
   return placeWords(items, input.zoom);
+}
+
+function frameItem(frame: SheetFrame | null): SceneLine[] {
+  if (frame === null) return [];
+  const [left, top, width, height] = frame;
+  const corners: SheetPoint[] = [
+    [left, top],
+    [left + width, top],
+    [left + width, top + height],
+    [left, top + height],
+    [left, top],
+  ];
+  const look = { colour: COLOURS.ink, widthPx: 1, dashPx: [2, 5], end: 'none', hatchPx: 0 } as const;
+  return [{ id: 'frame', shape: 'line', points: corners, look, strong: false }];
 }
 
 function shownEntities(input: SceneInput): Shown[] {

@@ -33,6 +33,7 @@ function inputOf(changes: Partial<SceneInput> = {}): SceneInput {
     map: null,
     readOnly: false,
     zoom: 1,
+    frame: null,
     ...changes,
   };
 }
@@ -99,6 +100,20 @@ describe('the scene', () => {
       },
     });
     expect(buildScene(inputOf({ document }))).toEqual([]);
+  });
+
+  it('outlines the section where the sheet holds more than it', () => {
+    const items = buildScene(inputOf({ frame: [10, 20, 300, 200] }));
+    expect(items[0]).toMatchObject({
+      id: 'frame',
+      points: [
+        [10, 20],
+        [310, 20],
+        [310, 220],
+        [10, 220],
+        [10, 20],
+      ],
+    });
   });
 
   it('tells the sink only what differs', () => {
