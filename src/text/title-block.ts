@@ -57,6 +57,7 @@ export const titleBlockText = {
     sent: (name: string) => `waiting, ${name}`,
     accepted: (name: string) => `${name}, accepted`,
     returned: (name: string) => `${name}, returned`,
+    changedSince: (told: string) => `${told}; changed since`,
   },
   revisions: (count: number) => (count === 0 ? 'none' : String(count)),
   state: { missing: 'incomplete', wrong: 'wrong', question: 'check this', ok: '' },

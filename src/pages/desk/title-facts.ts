@@ -23,6 +23,7 @@ export function titleFactsOf(
     section: detail.section,
     drawn: names === '' ? text.notDrawn : `${names}, ${formatFullDay(new Date(last).toISOString())}`,
     checked: checkedText(detail.net),
+    checkedBefore: detail.net.changedSinceRevision ?? false,
     calculation: text.revisions(detail.revisionCount),
   };
 }

@@ -28,10 +28,12 @@ export interface TitleFacts {
   section: { name: string; chainage: string };
   drawn: string;
   checked: string;
+  /** True when the check is of an older state than the one shown. */
+  checkedBefore?: boolean;
   calculation: string;
 }
 
-type Told = Pick<TitleCell, 'label' | 'value'> & { state?: CellState };
+type Told = Pick<TitleCell, 'label' | 'value'> & { state?: CellState | undefined };
 
 /** The cells in their order on the sheet. `reading` null: not worked out yet, so no figure of it is shown. */
 export function titleBlockCells(
@@ -52,7 +54,11 @@ export function titleBlockCells(
   ];
   const foot: TitleCell[] = [
     cell('drawn', { label: labels.drawn, value: [facts.drawn] }),
-    cell('checked', { label: labels.checked, value: [facts.checked] }),
+    cell('checked', {
+      label: labels.checked,
+      value: [facts.checked],
+      state: facts.checkedBefore ? 'question' : undefined,
+    }),
     cell('calculation', { label: labels.calculation, value: [facts.calculation] }),
   ];
   const told: Array<[TitleBlockCell, Told]> = [
@@ -205,8 +211,10 @@ export function byWeight(findings: readonly Finding[]): Finding[] {
   return [...findings].sort((a, b) => WEIGHTS.indexOf(a.weight) - WEIGHTS.indexOf(b.weight));
 }
 
-/** What the cell "Checked" says of a net. */
-export function checkedText(net: Pick<NetSummary, 'state' | 'reviewer'>): string {
+/** What the cell "Checked" says of a net: a check of what was changed since is no check of what is shown. */
+export function checkedText(net: Pick<NetSummary, 'state' | 'reviewer' | 'changedSinceRevision'>): string {
   const { checkedBy } = text;
-  return net.state === 'draft' ? checkedBy.draft : checkedBy[net.state](shortName(net.reviewer?.name ?? ''));
+  if (net.state === 'draft') return checkedBy.draft;
+  const told = checkedBy[net.state](shortName(net.reviewer?.name ?? ''));
+  return net.changedSinceRevision ? checkedBy.changedSince(told) : told;
 }

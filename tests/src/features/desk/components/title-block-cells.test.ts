@@ -1,6 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import type { Run } from '#client/features/desk/components/runs.tsx';
-import { type CellId, titleBlockCells } from '#client/features/desk/components/title-block-cells.ts';
+import {
+  type CellId,
+  checkedText,
+  titleBlockCells,
+} from '#client/features/desk/components/title-block-cells.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import type { DocumentEntity } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
@@ -109,5 +113,14 @@ describe('the title block', () => {
 
   it('puts the gravest finding into the net check', () => {
     expect(block({}).cell('netCheck')).toMatch(/^Net check: .+set out.+ \[missing\]$/);
+  });
+
+  it('does not pass an earlier check off as one of what was changed since', () => {
+    const net = { state: 'accepted', reviewer: { id: ID(9), name: 'Remi Okafor' } } as const;
+    expect(checkedText({ ...net, changedSinceRevision: false })).toBe('R. Okafor, accepted');
+    const checked = checkedText({ ...net, changedSinceRevision: true });
+    expect(checked).toBe('R. Okafor, accepted; changed since');
+    const cells = titleBlockCells(documentWith({}), null, { ...FACTS, checked, checkedBefore: true });
+    expect(cells.find((each) => each.id === 'checked')).toMatchObject({ state: 'question', said: true });
   });
 });
