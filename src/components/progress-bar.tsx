@@ -10,10 +10,7 @@ export function ProgressBar({ label, value }: { label: string; value: number | n
       aria-valuenow={percent ?? undefined}
       className="h-1.5 w-full border border-ink-2 bg-white"
     >
-      <div
-        className="h-full bg-equipotential"
-        style={{ width: `${percent ?? 100}%`, opacity: percent === null ? 0.35 : 1 }}
-      />
+      <div className="h-full bg-equipotential" style={{ width: `${percent ?? 0}%` }} />
     </div>
   );
 }

@@ -11,13 +11,13 @@ function hrefOf(address: string): string {
 }
 
 /**
- * The mail's plain text with its links pressed as in a mail program. Only the text is shown: the mail's own HTML
+ * The mail's plain text, in even letters since it holds tables made of spaces, with its links pressed as in a mail program. Only the text is shown: the mail's own HTML
  * is never put into this page.
  */
 export function MailText({ text }: { text: string }) {
   const parts = text.split(ADDRESS);
   return (
-    <div className="max-w-[72ch] break-words whitespace-pre-wrap">
+    <div className="max-w-[90ch] font-mono text-sm break-words whitespace-pre-wrap">
       {parts.map((part, index) => (
         // The parts of one text never move.
         // biome-ignore lint/suspicious/noArrayIndexKey: the position is what tells equal parts apart
