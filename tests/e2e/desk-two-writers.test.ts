@@ -46,6 +46,18 @@ describe('a figure typed on the desk', () => {
   });
 });
 
+describe('a page that is left', () => {
+  it('sends what was changed the moment before', async () => {
+    await typeHeadwater(page, '115');
+    await page.getByRole('navigation', { name: 'Where you are' }).getByRole('link').first().click();
+    await page.getByRole('heading', { level: 1 }).waitFor();
+    const saved = async () => (await page.request.get(`/api/v1${address}`)).text();
+    await expect.poll(saved, WITHIN).toContain('"headwater":115');
+    await page.goBack();
+    await cell(page, 'Headwater').waitFor();
+  });
+});
+
 describe('a net open in two tabs of one browser', () => {
   it('is written in one of them; the other says so, follows, and can take over', async () => {
     const second = await page.context().newPage();

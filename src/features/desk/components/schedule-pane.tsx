@@ -2,6 +2,7 @@ import { useEffect, useRef } from 'react';
 import { useStore } from 'zustand';
 import { buttonClass } from '#client/components/button.tsx';
 import { useNotice } from '#client/components/notice.tsx';
+import { copyText } from '#client/lib/copy-text.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
@@ -99,16 +100,6 @@ function SmallButton({ onClick, children }: { onClick: () => void; children: str
       {children}
     </button>
   );
-}
-
-async function copyText(copied: string): Promise<boolean> {
-  try {
-    await navigator.clipboard.writeText(copied);
-    return true;
-  } catch {
-    // No clipboard on an address that is not secure, or the person said no.
-    return false;
-  }
 }
 
 /** Brings the row of a point into view that was chosen on the sheet. */

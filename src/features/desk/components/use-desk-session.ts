@@ -49,6 +49,8 @@ export function useDeskSession(netId: string, personId: string): OpenDesk {
       if (!hasWriterLocks()) return show((detail) => openToWrite(detail, personId, false));
       lock.current = openWriterLock(queueOwner(personId, netId), {
         state: (state) => {
+          // At once: what is changed after the last of the queue is on the disk would be lost.
+          if (state === 'elsewhere') current?.store.setReadOnly(true);
           if (state === 'writer') void show((detail) => openToWrite(detail, personId, true));
           if (state === 'elsewhere') void show((detail) => openToRead(detail, 'elsewhere'));
         },
@@ -59,9 +61,10 @@ export function useDeskSession(netId: string, personId: string): OpenDesk {
     start().catch((failure) => ended || setError(failure));
     return () => {
       ended = true;
-      lock.current?.close();
+      const held = lock.current;
       lock.current = null;
-      void current?.close();
+      // The right to write goes last: whoever has it next reads the queue as this visit leaves it.
+      void Promise.resolve(current?.leave()).finally(() => held?.close());
       setSession(null);
       setError(null);
     };

@@ -13,14 +13,19 @@ import { batchSender } from './send-commands.ts';
 /** Why the traces cannot be changed here; null when they can. */
 export type ReadOnlyReason = 'noPart' | 'putAway' | 'elsewhere' | null;
 
+/** How long a page that is left goes on sending before it leaves the rest to the next visit. */
+const LEAVE_WITHIN_MS = 3000;
+
 /** One open net: its store, what saves it, and what keeps it up with others. */
 export interface DeskSession {
   store: DeskStore;
   saving: Saving | null;
   readOnly: ReadOnlyReason;
   catchUp: () => Promise<void>;
-  /** Ends saving after what is left is on the disk, and frees the reader. */
+  /** Ends saving after what is left is on the disk, and frees the reader. Sends nothing more: another tab may write. */
   close(): Promise<void>;
+  /** As `close`, for a page that is left: what waits is sent first, so that it need not wait for the next visit. */
+  leave(): Promise<void>;
 }
 
 export function reasonAgainstWriting(detail: NetDetailDto): 'noPart' | 'putAway' | null {
@@ -76,14 +81,20 @@ function sessionOf(
   saving: Saving | null,
   readOnly: ReadOnlyReason,
 ): DeskSession {
+  const close = async () => {
+    await saving?.stop();
+    store.close();
+  };
   return {
     store,
     saving,
     readOnly,
     catchUp: createCatchUp(store, (since) => fetchChanges(netId, since)),
-    async close() {
-      await saving?.stop();
-      store.close();
+    close,
+    async leave() {
+      const patience = new Promise((resolve) => setTimeout(resolve, LEAVE_WITHIN_MS));
+      await Promise.race([saving?.flush(), patience]);
+      await close();
     },
   };
 }
