@@ -27,12 +27,13 @@ export function byteText(bytes: number): string {
   return bytes < MB ? `${Math.ceil(bytes / 1024)} kB` : `${(bytes / MB).toFixed(1)} MB`;
 }
 
-/** Where the work on a net stands, in a few words. */
+/** Where the work on a net stands, in a few words; what was changed since is not what was sent or decided on. */
 export function netStateText(net: NetSummary): string {
   const label = net.revisionLabel ? ` ${net.revisionLabel}` : '';
-  if (net.state === 'sent') return 'sent for checking';
-  if (net.state === 'accepted') return `accepted${label}`;
-  if (net.state === 'returned') return `returned${label}`;
+  const since = net.changedSinceRevision ? ', changed since' : '';
+  if (net.state === 'sent') return `sent for checking${since}`;
+  if (net.state === 'accepted') return `accepted${label}${since}`;
+  if (net.state === 'returned') return `returned${label}${since}`;
   return net.drops === null ? 'not finished' : 'traced';
 }
 

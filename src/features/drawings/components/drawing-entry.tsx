@@ -143,9 +143,9 @@ function SectionRow({ row: { section, net }, drawingId }: { row: Row; drawingId:
 function NetMark({ net }: { net: NetSummary }) {
   if (net.openNotes > 0)
     return <span className="font-semibold text-attention">{text.notesOpen(net.openNotes)}</span>;
-  if (net.state === 'accepted')
+  if (net.state === 'accepted' && !net.changedSinceRevision)
     return <span className="font-semibold text-good">{capitalised(netStateText(net))}</span>;
-  if (net.state === 'returned')
+  if (net.state === 'accepted' || net.state === 'returned')
     return <span className="font-semibold text-attention">{capitalised(netStateText(net))}</span>;
   return net.state === 'sent' && net.reviewer ? <span>{shortName(net.reviewer.name)}</span> : null;
 }
