@@ -24,7 +24,8 @@ import { makeSecrets, readSecrets } from './secrets.mjs';
  * Starts the project's own PostgreSQL cluster, making it first when there is none. Other clusters on the
  * machine are neither looked at nor touched.
  * @param {string} storageDir
- * @param {{settings?: string[], quiet?: boolean}} [options] further lines for the configuration
+ * @param {{settings?: string[], quiet?: boolean, throwAway?: boolean}} [options] `settings`: further lines for the
+ *   configuration; `throwAway`: nothing in it has to survive, so nothing is waited for
  * @returns {Promise<RunningCluster>}
  */
 export async function startCluster(storageDir, options = {}) {
@@ -37,12 +38,7 @@ export async function startCluster(storageDir, options = {}) {
   const cluster = dataDir
     ? await openCluster(dataDir, files.secrets)
     : await makeCluster(files, user, options);
-  const { port, startedHere } = await startPostmaster(
-    cluster,
-    user,
-    kept?.port ?? null,
-    options.settings ?? [],
-  );
+  const { port, startedHere } = await startPostmaster(cluster, user, kept?.port ?? null, settingsOf(options));
   const state = { dataDir: cluster.dataDir, port, rolesReady: kept?.rolesReady === true };
   const stop = () => stopPostmaster(cluster, user);
   try {
@@ -53,6 +49,12 @@ export async function startCluster(storageDir, options = {}) {
     throw error;
   }
   return { ...cluster, port, startedHere, stop };
+}
+
+/** @param {{settings?: string[], throwAway?: boolean}} options */
+function settingsOf({ settings = [], throwAway = false }) {
+  const unsafe = ['fsync = off', 'synchronous_commit = off', 'full_page_writes = off'];
+  return throwAway ? [...unsafe, ...settings] : settings;
 }
 
 /** The system user comes with Debian's package, so that has to be there first. */
@@ -80,7 +82,7 @@ async function openCluster(dataDir, secretsFile) {
  * first start leaves nothing that looks like a database.
  * @param {ReturnType<typeof startFiles>} files
  * @param {import('./postgres-user.mjs').SystemUser | null} user
- * @param {{quiet?: boolean}} options
+ * @param {{quiet?: boolean, throwAway?: boolean}} options
  */
 async function makeCluster(files, user, options) {
   const { binDir } = await ensurePostgres();
@@ -90,7 +92,7 @@ async function makeCluster(files, user, options) {
   const passwordFile = `${draft}.password`;
   writeFileSync(passwordFile, `${secrets.superuserPassword}\n`, { mode: 0o600 });
   if (user) chownSync(passwordFile, user.uid, user.gid);
-  const initdb = await runCommand(path.join(binDir, 'initdb'), initdbArgs(draft, passwordFile), {
+  const initdb = await runCommand(path.join(binDir, 'initdb'), initdbArgs(draft, passwordFile, options), {
     user,
     cwd: '/',
   });
@@ -103,8 +105,8 @@ async function makeCluster(files, user, options) {
   return { binDir, dataDir, secrets };
 }
 
-/** Without an explicit encoding an empty environment would give SQL_ASCII. @param {string} folder @param {string} passwordFile */
-function initdbArgs(folder, passwordFile) {
+/** Without an explicit encoding an empty environment would give SQL_ASCII. @param {string} folder @param {string} passwordFile @param {{throwAway?: boolean}} options */
+function initdbArgs(folder, passwordFile, options) {
   return [
     `--pgdata=${folder}`,
     '--username=postgres',
@@ -113,6 +115,7 @@ function initdbArgs(folder, passwordFile) {
     '--encoding=UTF8',
     '--locale=C.UTF-8',
     '--data-checksums',
+    ...(options.throwAway ? ['--no-sync'] : []),
   ];
 }
 

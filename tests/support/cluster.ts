@@ -12,8 +12,6 @@ declare module 'vitest' {
   }
 }
 
-/** Nothing in it has to survive anything, so nothing is waited for. */
-const FAST = ['fsync = off', 'synchronous_commit = off', 'full_page_writes = off', 'max_connections = 200'];
 const PREFIX = 'tracehead-test-';
 
 /** Starts PostgreSQL once for a run and makes the template that each test file clones. */
@@ -22,7 +20,11 @@ export async function setup(project: TestProject): Promise<() => Promise<void>> 
   const folder = mkdtempSync(path.join(os.tmpdir(), `${PREFIX}${process.pid}-`));
   // As root the database runs as another system user, who has to get in.
   chmodSync(folder, 0o755);
-  const cluster = await startCluster(folder, { settings: FAST, quiet: true });
+  const cluster = await startCluster(folder, {
+    settings: ['max_connections = 200'],
+    quiet: true,
+    throwAway: true,
+  });
   const { superuser, owner, app } = databaseUrls(cluster);
   const db = await createDataSource({ url: owner, poolSize: 1 }).initialize();
   await db.runMigrations({ transaction: 'each' });
