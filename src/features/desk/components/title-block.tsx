@@ -3,23 +3,23 @@ import { titleBlockText as text } from '#client/text/title-block.ts';
 import { Runs } from './runs.tsx';
 import type { CellId, TitleCell } from './title-block-cells.ts';
 
-/** Columns of four each cell takes, as on the sheet. */
+/** Columns of eight each cell takes, as on the sheet. */
 const SPANS: Record<CellId, string> = {
-  section: 'col-span-2',
-  dam: 'col-span-2',
-  scale: 'col-span-2',
-  residual: 'col-span-2',
-  headwater: 'col-span-2',
-  outlet: 'col-span-2',
-  drops: 'col-span-1',
-  channels: 'col-span-1',
-  headPerDrop: 'col-span-2',
-  permeability: 'col-span-2',
-  seepage: 'col-span-2',
-  netCheck: 'col-span-4',
-  drawn: 'col-span-2',
-  checked: 'col-span-1',
-  calculation: 'col-span-1',
+  section: 'col-span-4',
+  dam: 'col-span-4',
+  scale: 'col-span-4',
+  residual: 'col-span-4',
+  headwater: 'col-span-4',
+  outlet: 'col-span-4',
+  drops: 'col-span-2',
+  channels: 'col-span-2',
+  headPerDrop: 'col-span-4',
+  permeability: 'col-span-4',
+  seepage: 'col-span-4',
+  netCheck: 'col-span-8',
+  drawn: 'col-span-3',
+  checked: 'col-span-3',
+  calculation: 'col-span-2',
 };
 
 interface TitleBlockProps {
@@ -43,7 +43,7 @@ export function TitleBlock({ cells, stale, open, onStep }: TitleBlockProps) {
       role="group"
       aria-label={text.name}
       aria-busy={stale}
-      className="grid shrink-0 grid-cols-4 gap-px border-t-[1.5px] border-ink bg-ink"
+      className="grid shrink-0 grid-cols-8 gap-px border-t-[1.5px] border-ink bg-ink"
     >
       {cells.map((cell) => (
         <Cell key={cell.id} cell={cell} open={open === cell.id} onStep={onStep} />
