@@ -1,6 +1,7 @@
 import { rm } from 'node:fs/promises';
 import sharp, { type Sharp } from 'sharp';
 import type { PageScan } from './pdf-scan.ts';
+import { RenderRefusal } from './refusal.ts';
 import type { RenderedSheet, RenderRequest, TileFormat } from './render-types.ts';
 import { writeScan } from './scan-raster.ts';
 import { sampledFormat } from './tile-format.ts';
@@ -8,7 +9,7 @@ import { writeTilePyramid } from './tile-pyramid.ts';
 
 /**
  * A PDF page that is one scan, shown in the scan's own pixels, upright. Null when the scan is not what the page says
- * of it or is damaged; the page then has to be drawn.
+ * of it; the page then has to be drawn. @throws RenderRefusal when part of the scan is missing
  */
 export async function renderScan(
   scan: PageScan,
@@ -33,7 +34,9 @@ export async function renderScan(
       onProgress,
     );
     return { widthPx, heightPx, dpi: scan.dpi, note: '', ...tiles };
-  } catch {
+  } catch (error) {
+    // Drawn by pdf.js, what is missing of the scan would be white or black and nothing would tell.
+    if (error instanceof RenderRefusal) throw error;
     await Promise.all(
       [outFolder, `${outFolder}_files`, `${outFolder}.dzi`].map((left) =>
         rm(left, { recursive: true, force: true }),

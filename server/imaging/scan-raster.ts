@@ -1,13 +1,14 @@
 import { open, writeFile } from 'node:fs/promises';
-import { createInflate } from 'node:zlib';
+import { createInflate, type Inflate } from 'node:zlib';
 import { BandRaster, rowBytesOf, tiffHeader } from './band-raster.ts';
 import type { PageScan } from './pdf-scan.ts';
+import { refusals } from './refusal.ts';
 
 const G3 = 3;
 const G4 = 4;
 const BATCH_BYTES = 2 ** 20;
 
-/** Writes a page's scan as a file that libvips reads from top to bottom. @throws Error when it is not what it says */
+/** Writes a page's scan as a file that libvips reads from top to bottom. @throws Error when it is not what it says, RenderRefusal when it is cut short */
 export async function writeScan(scan: PageScan, file: string): Promise<void> {
   if (scan.coding === 'jpeg') await writeFile(file, scan.data);
   else if (scan.coding === 'fax') await writeFax(scan, file);
@@ -71,7 +72,7 @@ async function writeInflated(scan: PageScan, file: string): Promise<void> {
       if (batch.length * rowBytes > BATCH_BYTES) await write();
     }
     await write();
-    if (rows < scan.heightPx) throw new Error('the scan is cut short');
+    if (rows < scan.heightPx) throw refusals.damagedPage('the scan is cut short');
   } finally {
     await raster.close();
   }
@@ -81,12 +82,21 @@ async function* rowsOf(data: Uint8Array, rowBytes: number): AsyncGenerator<Uint8
   const inflate = createInflate({ chunkSize: 2 ** 18 });
   inflate.end(data);
   let carried = Buffer.alloc(0);
-  for await (const chunk of inflate) {
-    const bytes = carried.length > 0 ? Buffer.concat([carried, chunk as Buffer]) : (chunk as Buffer);
+  for await (const chunk of readable(inflate)) {
+    const bytes = carried.length > 0 ? Buffer.concat([carried, chunk]) : chunk;
     let at = 0;
     for (; at + rowBytes <= bytes.length; at += rowBytes)
       yield Uint8Array.prototype.slice.call(bytes, at, at + rowBytes);
     carried = Buffer.from(bytes.subarray(at));
+  }
+}
+
+/** What can be inflated; how much is missing shows in the number of rows. */
+async function* readable(inflate: Inflate): AsyncGenerator<Buffer> {
+  try {
+    for await (const chunk of inflate) yield chunk as Buffer;
+  } catch (error) {
+    if (!(error instanceof Error && 'code' in error && String(error.code).startsWith('Z_'))) throw error;
   }
 }
 

@@ -225,6 +225,12 @@ describe('a PDF page that is one scan', () => {
     expect(sheet.dpi).toBe(DRAWN_DPI);
   });
 
+  it.each(codings)('of %s that end half-way is refused, not shown in part', async (_name, data, picture) => {
+    const whole = await data();
+    const half = whole.subarray(0, whole.length >> 1);
+    await expect(rendered(pdfOf({ data: half, picture }))).rejects.toMatchObject({ code: 'damaged' });
+  });
+
   it('whose data are damaged is refused, not shown in part', async () => {
     const picture = '/Filter /DCTDecode /ColorSpace /DeviceGray /BitsPerComponent 8';
     await expect(rendered(pdfOf({ data: Buffer.from('no JPEG'), picture }))).rejects.toMatchObject({

@@ -102,6 +102,20 @@ describe('a scan', () => {
     },
   );
 
+  it('in fax data that end half-way is refused, not shown with its lower half white', async () => {
+    const tiff = await g4Drawing({ width: 512, height: 512 });
+    // One strip or more: the last one's byte count is halved, as a scanner that ran out of memory leaves it.
+    const directory = tiff.readUInt32LE(4);
+    for (let index = 0; index < tiff.readUInt16LE(directory); index++) {
+      const entry = directory + 2 + index * 12;
+      if (tiff.readUInt16LE(entry) !== 279) continue;
+      const count = tiff.readUInt32LE(entry + 4);
+      const at = count === 1 ? entry + 8 : tiff.readUInt32LE(entry + 8) + 4 * (count - 1);
+      tiff.writeUInt32LE(tiff.readUInt32LE(at) >> 1, at);
+    }
+    await expect(render(tiff)).rejects.toMatchObject({ code: 'damaged' });
+  });
+
   it('in 12 bits stored as 16 is not shown black', async () => {
     const words = new Uint16Array(64 * 64).map((_, index) => (index % 64) * 64);
     const raw = { width: 64, height: 64, channels: 1 as const };
