@@ -2,8 +2,8 @@ import { v7 as newUuid } from 'uuid';
 import { createStore } from 'zustand/vanilla';
 import { deskCanvasText as text } from '#client/text/desk-canvas.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import { createDeskEdits } from './desk-edits.ts';
 import type {
-  CommandOp,
   DeskActions,
   DeskCommand,
   DeskState,
@@ -12,49 +12,18 @@ import type {
   Draft,
   RunResult,
 } from './desk-state.ts';
-import { applyOps, type LocalOp } from './document-ops.ts';
-import {
-  EMPTY_HISTORY,
-  type History,
-  type HistoryStep,
-  historyLabels,
-  isUntouched,
-  stepOf,
-  withStep,
-} from './history.ts';
 import type { DeskIntent } from './intents.ts';
+import { createListeners } from './listeners.ts';
 import { reopenedLine } from './reopened-line.ts';
 import { NO_SELECTION, prunedSelection } from './selection.ts';
-import {
-  acknowledgeOutcomes,
-  baseVersionOf,
-  keepTheirs,
-  rebaseMine,
-  receiveChanges,
-  type SharedDocument,
-  sharedDocumentOf,
-  withVersion,
-} from './shared-edits.ts';
 
-const ACCEPTED: RunResult = { ok: true };
+type Opened = { document: FlowNetDocument; changeNumber?: number };
 
-/** The state of one open net: its document with local changes, what is chosen, and what the server knows. */
-export function createDeskStore(
-  detail: { document: FlowNetDocument; changeNumber?: number },
-  options: DeskStoreOptions = {},
-): DeskStore {
-  const makeId = options.newId ?? newUuid;
-  const commandListeners = new Set<(command: DeskCommand) => void>();
-  const intentListeners = new Set<(intent: DeskIntent) => void>();
-  const lookListeners = new Set<(at: SheetPoint) => void>();
-  let shared: SharedDocument = sharedDocumentOf(detail.document);
-  let history: History = EMPTY_HISTORY;
-  let commandNumber = 0;
-
-  const store = createStore<DeskState>(() => ({
-    document: detail.document,
+function firstState(opened: Opened, options: DeskStoreOptions): DeskState {
+  return {
+    document: opened.document,
     documentRevision: 0,
-    changeNumber: detail.changeNumber ?? 0,
+    changeNumber: opened.changeNumber ?? 0,
     reading: options.reading ?? null,
     readingOf: options.reading === undefined ? -1 : 0,
     readingFailed: false,
@@ -63,110 +32,66 @@ export function createDeskStore(
     selection: NO_SELECTION,
     pointerAt: null,
     hiddenKinds: [],
-    history: historyLabels(EMPTY_HISTORY),
+    history: { undoLabel: null, redoLabel: null },
     draft: null,
     preview: {},
     conflicts: {},
     pending: {},
     notice: null,
     readOnly: options.readOnly ?? false,
-  }));
+  };
+}
+
+/** The state of one open net: its document with local changes, what is chosen, and what the server knows. */
+export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}): DeskStore {
+  const commands = createListeners<DeskCommand>();
+  const intents = createListeners<DeskIntent>();
+  const looks = createListeners<SheetPoint>();
+  const edits = createDeskEdits(opened.document, commands.tell);
+  const store = createStore<DeskState>(() => firstState(opened, options));
 
   const endAnswers = options.reader?.onAnswer((revision, reading) => {
     if (reading === null) store.setState({ readingFailed: true });
     else store.setState({ reading, readingOf: revision, readingFailed: false });
   });
-  options.reader?.ask(detail.document, 0);
+  options.reader?.ask(opened.document, 0);
 
-  /** Publishes `shared` and asks for a reading when the values, not only versions, have changed. */
-  function publish(next: SharedDocument, extra: Partial<DeskState> = {}): void {
-    shared = next;
+  /** Publishes the edits and asks for a reading when values, not only versions, have changed. */
+  function publish(extra: Partial<DeskState> = {}): void {
+    const { document, pending, conflicts } = edits.shared();
     const before = store.getState();
-    const { document } = next;
     const changed = valuesDiffer(document, before.document);
-    const documentRevision = changed ? before.documentRevision + 1 : before.documentRevision;
+    const documentRevision = before.documentRevision + (changed ? 1 : 0);
     store.setState({
+      ...extra,
       document,
       documentRevision,
-      pending: next.pending,
-      conflicts: next.conflicts,
-      history: historyLabels(history),
-      selection: prunedSelection(extra.selection ?? before.selection, document),
-      draft: keptDraft(extra.draft === undefined ? before.draft : extra.draft, document),
-      changeNumber: extra.changeNumber ?? before.changeNumber,
-      notice: extra.notice === undefined ? before.notice : extra.notice,
+      pending,
+      conflicts,
+      history: edits.labels(),
+      selection: prunedSelection(before.selection, document),
+      draft: keptDraft(before.draft, document),
     });
     if (changed) options.reader?.ask(document, documentRevision);
   }
 
-  function refuse(reason: string): RunResult {
-    store.setState({ notice: reason });
-    return { ok: false, reason };
+  /** Carries an edit out and publishes it; a refusal is shown. */
+  function edit(action: () => RunResult): RunResult {
+    const result: RunResult = store.getState().readOnly ? { ok: false, reason: text.readOnly } : action();
+    publish({ notice: result.ok ? null : result.reason });
+    return result;
   }
 
-  function reasonAgainst(ops: readonly LocalOp[]): string | null {
-    if (store.getState().readOnly) return text.readOnly;
-    return ops.some((op) => shared.conflicts[op.entityId] !== undefined) ? text.inConflict : null;
-  }
-
-  /** Applies ops as one command of ours and tells the saving part; gives null when they change nothing. */
-  function applyAsCommand(label: string, ops: readonly LocalOp[], tell: boolean): HistoryStep | null {
-    const bases = ops.map((op) => baseVersionOf(shared, op.entityId));
-    const applied = applyOps(shared.document, ops, (id) => baseVersionOf(shared, id));
-    if (applied.ops.length === 0) return null;
-    commandNumber += 1;
-    const pending = { ...shared.pending };
-    const tombstones = { ...shared.tombstones };
-    ops.forEach((op, i) => {
-      if (op.op === 'remove') tombstones[op.entityId] = bases[i]!;
-    });
-    for (const op of applied.ops) pending[op.entityId] = commandNumber;
-    shared = { ...shared, document: applied.document, pending, tombstones };
-    if (tell) {
-      const sent = applied.ops.map((op) => ({ ...op, baseVersion: baseVersionOf(shared, op.entityId) }));
-      const command: DeskCommand = { number: commandNumber, label, ops: sent };
-      for (const listener of commandListeners) listener(command);
-    }
-    return stepOf(label, applied);
-  }
-
-  /** Takes the newest step of one list back and puts what restores it on the other. */
   function takeStep(from: 'done' | 'undone'): RunResult {
-    const step = history[from].at(-1);
-    if (step === undefined) return refuse(from === 'done' ? text.nothingToUndo : text.nothingToRedo);
-    const against = reasonAgainst(step.inverse);
-    if (against !== null) return refuse(against);
-    const remaining = history[from].slice(0, -1);
-    if (!isUntouched(step, shared.document)) {
-      history = { ...history, [from]: remaining };
-      publish(shared);
-      return refuse(text.changedSince(step.label));
-    }
-    const before = shared.document;
-    const label = from === 'done' ? text.undone(step.label) : text.redone(step.label);
-    const back = applyAsCommand(label, step.inverse, true);
-    const other = from === 'done' ? 'undone' : 'done';
-    const moved = back === null ? history[other] : [...history[other], { ...back, label: step.label }];
-    history = { ...history, [from]: remaining, [other]: moved };
-    const { draft, tool } = store.getState();
-    const reopened = draft === null ? reopenedLine(before, shared.document, tool) : null;
-    publish(shared, {
-      notice: null,
-      draft: reopened === null ? draft : { lineId: reopened, atStart: false },
-    });
-    return ACCEPTED;
+    const { document, draft, tool } = store.getState();
+    const result = edit(() => edits.takeStep(from));
+    const lineId = draft === null ? reopenedLine(document, edits.shared().document, tool) : null;
+    if (lineId !== null) actions.setDraft({ lineId, atStart: false });
+    return result;
   }
 
   const actions: DeskActions = {
-    run(label, ops) {
-      const against = reasonAgainst(ops);
-      if (against !== null) return refuse(against);
-      const step = applyAsCommand(label, ops, true);
-      if (step === null) return ACCEPTED;
-      history = withStep(history, step);
-      publish(shared, { notice: null });
-      return ACCEPTED;
-    },
+    run: (label, ops) => edit(() => edits.run(label, ops)),
     undo: () => takeStep('done'),
     redo: () => takeStep('undone'),
     setTool(tool, boundary) {
@@ -174,63 +99,46 @@ export function createDeskStore(
       if (readOnly && tool !== 'select' && tool !== 'note') return;
       store.setState({ tool, boundaryKind: boundary ?? boundaryKind, draft: null, preview: {} });
     },
-    select: (selection) =>
-      store.setState({ selection: prunedSelection({ vertex: null, ...selection }, shared.document) }),
+    select(selection) {
+      const { document } = store.getState();
+      store.setState({ selection: prunedSelection({ vertex: null, ...selection }, document) });
+    },
     setPointer: (pointerAt) => store.setState({ pointerAt }),
-    setDraft: (draft) => store.setState({ draft: keptDraft(draft, shared.document) }),
+    setDraft: (draft) => store.setState({ draft: keptDraft(draft, store.getState().document) }),
     setPreview: (preview) => store.setState({ preview }),
     setHidden: (hiddenKinds) => store.setState({ hiddenKinds }),
     setReadOnly: (readOnly) => store.setState({ readOnly, draft: null, preview: {}, tool: 'select' }),
     setNotice: (notice) => store.setState({ notice }),
     receive(changes) {
-      const next = receiveChanges(shared, changes.entities, options.clientId ?? null);
-      publish(next, { changeNumber: Math.max(store.getState().changeNumber, changes.changeNumber) });
+      edits.receive(changes, options.clientId ?? null);
+      publish({ changeNumber: Math.max(store.getState().changeNumber, changes.changeNumber) });
     },
-    acknowledge: (outcomes, through) => publish(acknowledgeOutcomes(shared, outcomes, through)),
+    acknowledge(outcomes, through) {
+      edits.acknowledge(outcomes, through);
+      publish();
+    },
     replay(ops) {
-      const before = shared;
-      applyAsCommand('', ops, false);
-      // What was kept stands on the version it was made on: a newer one at the server must come back as a conflict.
-      for (const op of ops) {
-        if (before.pending[op.entityId] === undefined)
-          shared = withVersion(shared, op.entityId, op.baseVersion);
-      }
-      publish(shared);
-      return commandNumber;
+      const number = edits.replay(ops);
+      publish();
+      return number;
     },
     resolveConflict(entityId, keep) {
-      const conflict = shared.conflicts[entityId];
-      if (conflict === undefined) return;
-      if (keep === 'theirs') return publish(keepTheirs(shared, entityId));
-      shared = rebaseMine(shared, entityId);
-      commandNumber += 1;
-      shared = { ...shared, pending: { ...shared.pending, [entityId]: commandNumber } };
-      const baseVersion = baseVersionOf(shared, entityId);
-      const op: CommandOp =
-        conflict.mine === null
-          ? { op: 'remove', entityId, baseVersion }
-          : { op: 'put', entityId, value: conflict.mine, baseVersion };
-      const command = { number: commandNumber, label: text.keptMine, ops: [op] };
-      for (const listener of commandListeners) listener(command);
-      publish(shared);
+      edits.resolve(entityId, keep);
+      publish();
     },
-    baseVersionOf: (entityId) => baseVersionOf(shared, entityId),
-    onCommand: (listener) => subscribeTo(commandListeners, listener),
-    emitIntent(intent) {
-      for (const listener of intentListeners) listener(intent);
-    },
-    onIntent: (listener) => subscribeTo(intentListeners, listener),
-    lookAt(at) {
-      for (const listener of lookListeners) listener(at);
-    },
-    onLookAt: (listener) => subscribeTo(lookListeners, listener),
-    newId: makeId,
+    baseVersionOf: edits.baseVersionOf,
+    onCommand: commands.add,
+    emitIntent: intents.tell,
+    onIntent: intents.add,
+    lookAt: looks.tell,
+    onLookAt: looks.add,
+    newId: options.newId ?? newUuid,
     close() {
       endAnswers?.();
       options.reader?.close();
-      commandListeners.clear();
-      intentListeners.clear();
-      lookListeners.clear();
+      commands.clear();
+      intents.clear();
+      looks.clear();
     },
   };
   return { ...store, ...actions };
@@ -248,9 +156,4 @@ function valuesDiffer(a: FlowNetDocument, b: FlowNetDocument): boolean {
   const ids = Object.keys(a.entities);
   if (ids.length !== Object.keys(b.entities).length) return true;
   return ids.some((id) => a.entities[id]?.value !== b.entities[id]?.value);
-}
-
-function subscribeTo<T>(listeners: Set<(value: T) => void>, listener: (value: T) => void): () => void {
-  listeners.add(listener);
-  return () => listeners.delete(listener);
 }
