@@ -6,8 +6,8 @@ const BROWSER = ['tests/e2e/**/*.test.ts'];
 
 export default defineConfig({
   test: {
-    // A start of PostgreSQL or the first load of a big package on a busy machine takes longer than the usual 5 s.
-    testTimeout: 30_000,
+    // A start of PostgreSQL or the first load of a big package on a busy machine takes much longer than the usual 5 s.
+    testTimeout: 60_000,
     hookTimeout: 120_000,
     maxWorkers: 2,
     projects: [
