@@ -91,6 +91,32 @@ describe('a drawing', () => {
   });
 });
 
+describe('a dam that others work on, too', () => {
+  it('shows a new drawing without reloading', async () => {
+    const remi = await addPerson(server.db, 'Remi Okafor');
+    await addMember(server.db, damId, remi.id, 'reviewer');
+    const watcher = await browser.newPage();
+    await watcher.goto(`/dams/${damId}`);
+    await signIn(watcher, remi);
+    await watcher.getByRole('link', { name: 'first.jpg', exact: true }).waitFor();
+    await addFiles(page, [await jpeg('seen by others.jpg')]);
+    await watcher.getByRole('table', { name: 'seen by others.jpg', exact: true }).waitFor();
+  });
+
+  it('takes a file that was refused because the sign-in had ended, once one has signed in again', async () => {
+    browser.expectConsoleError(answered(401));
+    browser.expectConsoleError(answered(403));
+    await server.db.query('DELETE FROM session');
+    await addFiles(page, [await jpeg('after the end.jpg')]);
+    const again = page.getByRole('dialog', { name: 'Sign in again' });
+    await again.getByLabel('Password').fill(iris.password);
+    await again.getByRole('button', { name: 'Sign in' }).click();
+    await again.waitFor({ state: 'detached' });
+    await page.getByRole('button', { name: 'Try again with after the end.jpg' }).click();
+    await ready('after the end.jpg').waitFor();
+  });
+});
+
 describe('a section', () => {
   it('is framed by a drag on the sheet, named, and given a net whose desk opens', async () => {
     await page.getByRole('link', { name: 'first.jpg', exact: true }).click();

@@ -69,6 +69,20 @@ describe('signing in', () => {
     await page.waitForURL(/sign-in/);
   });
 
+  it('leads with the keyboard from page to page, and past the bar to the content', async () => {
+    const page = await browser.newPage();
+    await page.goto('/');
+    await signIn(page, iris);
+    await page.getByRole('link', { name: 'Harrow Fen Dam' }).press('Enter');
+    await page.getByRole('heading', { name: 'Harrow Fen Dam', level: 1 }).waitFor();
+    const focused = () => page.evaluate(() => document.activeElement?.textContent ?? '');
+    await expect.poll(focused).toBe('Harrow Fen Dam');
+    await page.keyboard.press('Tab');
+    await expect.poll(focused).toBe('Settings and people');
+    await page.getByRole('link', { name: 'Skip to the content' }).press('Enter');
+    expect(await page.evaluate(() => document.activeElement?.id)).toBe('content');
+  });
+
   it('again over the page keeps what was typed and goes on', async () => {
     browser.expectConsoleError(answered(401));
     browser.expectConsoleError(answered(403));
@@ -159,6 +173,7 @@ describe('people', () => {
     const page = await browser.newPage();
     await page.goto(`/dams/${damId}/settings`);
     await signIn(page, iris);
+    await page.getByRole('heading', { name: 'Settings and people' }).waitFor();
     const address = 'tove.lind@harrow-fen.example';
     await page.getByLabel('E-mail address').fill(address);
     const addition = page.getByRole('group', { name: 'Parts', exact: true });
