@@ -62,13 +62,15 @@ function heldHeads(mesh: StripMesh, heads: StripHeads): Float64Array {
   return held;
 }
 
-/** Unknowns that are joined by triangles to a held one; the others have no head. */
+/** Unknowns that are joined to a held one by triangles that have an area; the others have no head. */
 function reachedUnknowns(mesh: StripMesh, held: Float64Array): Uint8Array {
   const reached = Uint8Array.from(held, (head) => (Number.isNaN(head) ? 0 : 1));
   const { unknowns } = mesh;
+  const solid: number[] = [];
+  for (let t = 0; t < unknowns.length; t += 3) if (stiffnessOf(mesh, t) !== null) solid.push(t);
   for (let changed = true; changed; ) {
     changed = false;
-    for (let t = 0; t < unknowns.length; t += 3) {
+    for (const t of solid) {
       const some = reached[unknowns[t]!]! + reached[unknowns[t + 1]!]! + reached[unknowns[t + 2]!]!;
       if (some === 0 || some === 3) continue;
       for (let k = 0; k < 3; k += 1) reached[unknowns[t + k]!] = 1;
@@ -108,10 +110,6 @@ function assemble(mesh: StripMesh, held: Float64Array, reached: Uint8Array): Sys
       }
     }
   }
-  for (let row = 0; row < n; row += 1) {
-    // A corner of nothing but triangles without area, on a straight outline: any head will do, it is never asked.
-    if (diagonal[row] === 0) diagonal[row] = 1;
-  }
   return { rows: packed(rows, diagonal), right, guess: new Float64Array(n).fill(meanOf(held)), rowOf };
 }
 
@@ -141,54 +139,59 @@ function meanOf(held: Float64Array): number {
 }
 
 /**
- * Head at a place in a solved strip; the place may lie outside its triangles by `slack` pixels, as a point on a traced
- * boundary does. Null where the field has no head.
+ * Head at a place in a solved strip. A place that lies outside its triangles by up to `slack` pixels, as a point on a
+ * traced boundary does, takes the head of the nearest place inside: nothing is extrapolated. Null where the field has
+ * no head.
  */
 export function fieldHeadAt(field: StripField, x: number, y: number, slack: number): number | null {
   const { mesh, heads } = field;
+  let nearest = slack;
   let best: number | null = null;
-  let worstInside = Number.NEGATIVE_INFINITY;
   for (let t = 0; t < mesh.triangles.length; t += 3) {
-    const parts = partsAt(mesh, t, x, y, slack);
-    if (parts === null) continue;
-    const inside = Math.min(parts.a, parts.b, parts.c);
-    if (inside <= worstInside) continue;
-    const held = heldInside(parts);
-    const head = held[0] * heads[t]! + held[1] * heads[t + 1]! + held[2] * heads[t + 2]!;
-    if (Number.isNaN(head)) continue;
-    worstInside = inside;
-    best = head;
-    if (inside >= 0) return head;
+    if (Number.isNaN(heads[t]! + heads[t + 1]! + heads[t + 2]!)) continue;
+    const found = nearestInTriangle(mesh, t, x, y, nearest);
+    if (found === null) continue;
+    const [a, b, c] = found.parts;
+    best = a * heads[t]! + b * heads[t + 1]! + c * heads[t + 2]!;
+    nearest = found.distance;
+    if (nearest === 0) return best;
   }
   return best;
 }
 
-type Parts = { a: number; b: number; c: number };
+type Nearest = { readonly distance: number; readonly parts: readonly [number, number, number] };
 
-/** Barycentric parts of a place in a triangle; null when it lies farther than `slack` from the triangle's box. */
-function partsAt(mesh: StripMesh, t: number, x: number, y: number, slack: number): Parts | null {
-  const { xy, triangles } = mesh;
-  const [p, q, r] = [triangles[t]!, triangles[t + 1]!, triangles[t + 2]!];
-  const [ax, ay, bx, by, cx, cy] = [
-    xy[2 * p]!,
-    xy[2 * p + 1]!,
-    xy[2 * q]!,
-    xy[2 * q + 1]!,
-    xy[2 * r]!,
-    xy[2 * r + 1]!,
-  ];
-  if (x < Math.min(ax, bx, cx) - slack || x > Math.max(ax, bx, cx) + slack) return null;
-  if (y < Math.min(ay, by, cy) - slack || y > Math.max(ay, by, cy) + slack) return null;
+/** The place of a triangle nearest to a place, as parts of its corners; null when it is farther than `limit`. */
+function nearestInTriangle(mesh: StripMesh, t: number, x: number, y: number, limit: number): Nearest | null {
+  const corners = [0, 1, 2].map((k) => {
+    const point = mesh.triangles[t + k]!;
+    return [mesh.xy[2 * point]!, mesh.xy[2 * point + 1]!] as const;
+  });
+  const [[ax, ay], [bx, by], [cx, cy]] = corners as [Corner, Corner, Corner];
+  if (x < Math.min(ax, bx, cx) - limit || x > Math.max(ax, bx, cx) + limit) return null;
+  if (y < Math.min(ay, by, cy) - limit || y > Math.max(ay, by, cy) + limit) return null;
   const whole = (bx - ax) * (cy - ay) - (by - ay) * (cx - ax);
-  if (whole === 0) return null;
   const b = ((x - ax) * (cy - ay) - (y - ay) * (cx - ax)) / whole;
   const c = ((bx - ax) * (y - ay) - (by - ay) * (x - ax)) / whole;
-  return { a: 1 - b - c, b, c };
+  if (b >= 0 && c >= 0 && b + c <= 1) return { distance: 0, parts: [1 - b - c, b, c] };
+  let best: Nearest | null = null;
+  for (let k = 0; k < 3; k += 1) {
+    const { distance, along } = toEdge(corners[k]!, corners[(k + 1) % 3]!, x, y);
+    if (distance > (best?.distance ?? limit)) continue;
+    const parts: [number, number, number] = [0, 0, 0];
+    parts[k] = 1 - along;
+    parts[(k + 1) % 3] = along;
+    best = { distance, parts };
+  }
+  return best;
 }
 
-/** Parts brought back into the triangle, so that nothing is extrapolated. */
-function heldInside({ a, b, c }: Parts): [number, number, number] {
-  const [pa, pb, pc] = [Math.max(0, a), Math.max(0, b), Math.max(0, c)];
-  const sum = pa + pb + pc;
-  return [pa / sum, pb / sum, pc / sum];
+type Corner = readonly [x: number, y: number];
+
+function toEdge(a: Corner, b: Corner, x: number, y: number): { distance: number; along: number } {
+  const dx = b[0] - a[0];
+  const dy = b[1] - a[1];
+  const square = dx * dx + dy * dy;
+  const along = square > 0 ? Math.min(1, Math.max(0, ((x - a[0]) * dx + (y - a[1]) * dy) / square)) : 0;
+  return { distance: Math.hypot(a[0] + along * dx - x, a[1] + along * dy - y), along };
 }

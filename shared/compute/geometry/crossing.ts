@@ -87,7 +87,8 @@ function parametersOf(
   const qx = dx - cx;
   const qy = dy - cy;
   const cross = rx * qy - ry * qx;
-  if (cross !== 0) {
+  // Segments of one straight line, parallel but for rounding, have no crossing worth the name.
+  if (Math.abs(cross) > 1e-9 * Math.hypot(rx, ry) * Math.hypot(qx, qy)) {
     const t = ((cx - ax) * qy - (cy - ay) * qx) / cross;
     const u = ((cx - ax) * ry - (cy - ay) * rx) / cross;
     if (Number.isFinite(t) && Number.isFinite(u)) return [held(t), held(u)];

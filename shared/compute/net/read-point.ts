@@ -1,6 +1,6 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
-import { nearestOnPolyline, type Polyline } from '#shared/compute/geometry/polyline.ts';
+import { nearestOnPolyline, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
 import { liesAbovePhreatic } from '#shared/compute/net/above-phreatic.ts';
 import { type HandReading, readByHand, stripAt } from '#shared/compute/net/hand-rule.ts';
 import { type HeadOfLine, headWhere, type NetHeads } from '#shared/compute/net/net-heads.ts';
@@ -174,7 +174,7 @@ function withFigures(
     explanation: onFreeFace
       ? `On the face of free outflow the total head is the elevation, ${fixedText(elevation, 2)}.`
       : explain(before, after, hand.fraction, headBefore, headAfter, totalHead, dropsLost, ground.unequal),
-    findings: negativePressure(point, pressureHead, sheetAt),
+    findings: [...negativePressure(point, pressureHead, sheetAt), ...nearOpenEnd(point, sheetAt, hand)],
   };
 }
 
@@ -211,6 +211,24 @@ function abovePhreatic(point: PlacedPoint): PointReading {
     explanation:
       'The point lies above the phreatic line. Suction is left out, and the pressure is given as 0.',
   };
+}
+
+/** Within a cell of an end that a mere straight join closes, the strip is not what the drawing says. */
+function nearOpenEnd(point: PlacedPoint, at: SheetPx, hand: HandReading): Finding[] {
+  const cell = hand.toBefore + hand.toAfter;
+  const near = hand.strip.ways.some((way) => {
+    const join = way.open ? polylineOf(way.points) : null;
+    return join !== null && nearestOnPolyline(join, at[0], at[1]).distance < cell;
+  });
+  if (!near) return [];
+  return [
+    makeFinding(
+      'note',
+      'nearOpenEnd',
+      'The point lies within a cell of an end at which no boundary is traced. Trace the boundary or the outermost flow line there.',
+      { cell: 'netCheck', entityIds: [point.id], at },
+    ),
+  ];
 }
 
 function negativePressure(point: PlacedPoint, pressureHead: number, at: SheetPx): Finding[] {

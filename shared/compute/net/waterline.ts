@@ -1,5 +1,5 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import { firstOf, lastOf, nearestOnPolyline } from '#shared/compute/geometry/polyline.ts';
+import { firstOf, lastOf, nearestOnPolyline, verticesOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
 import { elevationAt } from '#shared/compute/net/potentials.ts';
@@ -22,7 +22,7 @@ export function checkWaterline(
   const faces = linesOfKind(lines, 'submergedFace').filter((line) => line.value.water === 'headwater');
   const phreatics = linesOfKind(lines, 'phreaticLine');
   const starts = phreatics.map((line) => ({ line, at: startOf(line, faces) }));
-  if (starts.length === 0) return [];
+  if (starts.length === 0) return questionFaces(faces, map, headwater, tolerance);
   const highest = starts
     .map((start) => ({ ...start, elevation: elevationAt(map, ...start.at) }))
     .sort((a, b) => b.elevation - a.elevation)[0]!;
@@ -35,6 +35,29 @@ export function checkWaterline(
       { cell: 'headwater', entityIds: [highest.line.id], at: highest.at },
     ),
   ];
+}
+
+/** Without a phreatic line a face that sticks out of the water may have been traced to another waterline. */
+function questionFaces(
+  faces: readonly NetLine[],
+  map: SectionMap,
+  headwater: number,
+  tolerance: number,
+): Finding[] {
+  return faces.flatMap((face) => {
+    const top = verticesOf(face.shape)
+      .map((at) => ({ at, elevation: elevationAt(map, ...at) }))
+      .reduce((high, vertex) => (vertex.elevation > high.elevation ? vertex : high));
+    if (top.elevation <= headwater + tolerance) return [];
+    return [
+      makeFinding(
+        'question',
+        'faceSticksOut',
+        `The submerged face is traced up to elevation ${fixedText(top.elevation, 2)} and is cut off at the headwater, ${fixedText(headwater, 2)}. If it was traced to the waterline, the net holds for that level.`,
+        { cell: 'headwater', entityIds: [face.id], at: top.at },
+      ),
+    ];
+  });
 }
 
 /** The end of the phreatic line that lies nearer to the submerged face. */

@@ -73,10 +73,9 @@ describe.each(EXACT_NETS)('readings of an exact net: $name', (entry) => {
     );
     us.points.forEach((point, i) => {
       const other = si.points[i]!;
-      // Where base and drain run into one another, rounding moves their meeting by a thousandth of a pixel.
-      expect(point.dropsLost).toBeCloseTo(other.dropsLost!, 4);
+      expect(point.dropsLost).toBeCloseTo(other.dropsLost!, 9);
       // 1 psf = 0.04788026 kPa (published check 5-16, exact definitions).
-      expect(point.porePressure! * 0.047880259).toBeCloseTo(other.porePressure!, 3);
+      expect(point.porePressure! * 0.047880259).toBeCloseTo(other.porePressure!, 5);
     });
     expect(us.quantities.seepage! * METRES_PER_FOOT ** 2).toBeCloseTo(si.quantities.seepage!, 12);
   });

@@ -8,8 +8,8 @@ import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 import { randomReadings } from '#tests/support/exact-nets/random-readings.ts';
 import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
 
-/** In drops. Where base and drain run into one another, rounding moves their meeting by a thousandth of a pixel. */
-const SAME = 1e-4;
+/** In drops: coordinates of 1e4 px to double precision, times the steepest cell, with room to spare. */
+const SAME = 1e-9;
 
 /** Drops lost at each point, in the order of the points' names; the same places are asked in every variant. */
 function dropsOf(reading: NetReading): number[] {

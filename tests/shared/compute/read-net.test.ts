@@ -216,6 +216,18 @@ describe('the headwater', () => {
     expect(raised.quantities.headPerDrop).toBeCloseTo(9 / 12, 9);
   });
 
+  it('below the top of a face without a phreatic line is questioned', () => {
+    const steps = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit });
+    // The bed's far end is bent up into a bank that reaches above the headwater.
+    const bank = withLines(steps, 'submergedFace', (value, i) => {
+      const [x, y] = value.points.at(-1)!;
+      return i === 0 ? { ...value, points: [...value.points, [x - 100, y - 800]] } : value;
+    });
+    const reading = readNet(bank);
+    expect(codesOf(reading)).toContain('faceSticksOut');
+    expect(reading.state).toBe('read');
+  });
+
   it('clips a face that sticks out of the water', () => {
     // The face is traced on to a crest 6 m above the waterline.
     const document = withLines(parabolaNet(), 'submergedFace', (value) => {
@@ -271,6 +283,17 @@ describe('a point', () => {
       ]),
     ).points;
     expect(points.map((point) => point.findings.map((found) => found.code))).toEqual([['pointFarOff'], []]);
+  });
+
+  it('near an end at which no boundary is traced is flagged', () => {
+    const { net, pxPerUnit } = apron;
+    const readings = [
+      { at: net.placeAt(5.5, 6.8), clicked: true },
+      { at: net.placeAt(5.5, 1), clicked: true },
+    ];
+    const open = withLines(exactNetDocument(net, { pxPerUnit, readings }), 'flowLine', () => null);
+    const { points } = readNet(open);
+    expect(points.map((point) => point.findings.map((found) => found.code))).toEqual([['nearOpenEnd'], []]);
   });
 
   it('beside a wall is read on its own side', () => {
