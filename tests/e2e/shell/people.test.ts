@@ -208,6 +208,7 @@ describe('people', () => {
     const page = await browser.newPage();
     await page.goto('/sign-in');
     await page.getByRole('link', { name: 'Forgotten your password?' }).click();
+    await page.getByRole('heading', { name: 'Reset your password' }).waitFor();
     await page.getByLabel('E-mail address').fill(remi.email);
     await page.getByRole('button', { name: 'Send the link' }).click();
     await page.getByText('a mail with a link is on its way').waitFor();
