@@ -5,6 +5,7 @@ export const deskPageText = {
   untitledDrawing: 'Drawing',
   sheetLabel: (section: string, drawing: string) => `${section} on drawing ${drawing}`,
   panes: { sheet: 'Sheet', schedule: 'Schedule', notes: 'Notes', block: 'Title block' },
+  formPane: 'Form',
   panesLabel: 'Parts of the desk',
   noticeClose: 'Close',
   loadCase: {
@@ -23,5 +24,4 @@ export const deskPageText = {
     keep: 'Download the net',
     namingNeeded: 'Give it a name.',
   },
-  revisions: 'Revisions',
 } as const;

@@ -15,6 +15,8 @@ interface DeskGridProps {
   schedule: ReactNode;
   notes: ReactNode;
   block: ReactNode;
+  /** What the margin shows besides the notes: its pane is named after it on a narrow screen. */
+  marginIsForm: boolean;
   narrow: boolean;
   /** The pane shown where they do not fit side by side. */
   pane: DeskPane;
@@ -52,7 +54,9 @@ function WideGrid({ tools, lines, sheet, schedule, notes, block }: DeskGridProps
   );
 }
 
-function NarrowGrid({ tools, lines, sheet, schedule, notes, block, pane, onPane }: DeskGridProps) {
+function NarrowGrid(props: DeskGridProps) {
+  const { tools, lines, sheet, schedule, notes, block, pane, onPane } = props;
+  const names = props.marginIsForm ? { ...text.panes, notes: text.formPane } : text.panes;
   const place = (own: DeskPane) =>
     classNames('col-start-1 row-start-1 flex min-h-0 min-w-0 flex-col', pane !== own && 'invisible');
   return (
@@ -67,7 +71,7 @@ function NarrowGrid({ tools, lines, sheet, schedule, notes, block, pane, onPane 
         <div className={classNames(place('notes'), 'bg-film')}>{notes}</div>
         <div className={classNames(place('block'), 'overflow-y-auto bg-film')}>{block}</div>
       </div>
-      <PaneSwitch panes={PANES} names={text.panes} pane={pane} onPane={onPane} />
+      <PaneSwitch panes={PANES} names={names} pane={pane} onPane={onPane} />
     </>
   );
 }

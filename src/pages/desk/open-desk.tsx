@@ -90,6 +90,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
       >
         <DeskGrid
           heading={`${sectionName}, ${detail.net.name}`}
+          marginIsForm={margin.shows !== 'notes'}
           narrow={narrow}
           pane={pane}
           onPane={setPane}

@@ -39,7 +39,7 @@ export function Schedule({ document, reading, onEdit, selectedIds, onSelect }: S
           {columns.map((column) => (
             <Head key={column.column} column={column} sort={sort} onSort={setSort} />
           ))}
-          <th scope="col" className={classNames(CELL, 'border-rule')}>
+          <th scope="col" className="border-b border-rule px-2">
             <span className="sr-only">{text.head.count}</span>
           </th>
         </tr>
