@@ -54,7 +54,7 @@ export const deskPaletteText = {
   tracingKeys: 'Enter finishes the line, Backspace takes back the last point.',
   unfinishedLine: (kind: string) => `This ${kind} is unfinished. Enter goes on with it.`,
   chosenLine: (kind: string) => `Chosen: ${kind}.`,
-  chosenDrops: (drops: string) => `${drops} drops down.`,
+  chosenDrops: (drops: string) => `${drops} ${drops === '1' ? 'drop' : 'drops'} down.`,
   chosenHead: (head: string, unit: string) => `Head ${head} ${unit}.`,
   chosenKeys: 'Drag a vertex to move it, double-click a segment to put one in, Delete removes.',
 } as const;
