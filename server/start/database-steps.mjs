@@ -5,6 +5,7 @@ import { startFiles } from './paths.mjs';
 import { databaseUrls, startCluster } from './postgres-cluster.mjs';
 import { migrationsDone } from './postgres-roles.mjs';
 import { lastLines, runCommand } from './run-command.mjs';
+import { keptSessionSecret } from './secrets.mjs';
 
 /**
  * @typedef {object} OpenDatabase
@@ -20,19 +21,27 @@ import { lastLines, runCommand } from './run-command.mjs';
  * @returns {Promise<OpenDatabase>}
  */
 export async function openDatabase(storageDir, env) {
-  /** @type {NodeJS.ProcessEnv} */
-  const common = { ...env, STORAGE_DIR: storageDir };
-  if (env.DATABASE_URL) return { ownerEnv: common, appEnv: common, cluster: null };
-  const cluster = await startCluster(storageDir);
+  const cluster = env.DATABASE_URL ? null : await startCluster(storageDir);
+  const common = { ...env, STORAGE_DIR: storageDir, ...sessionSecret(storageDir, env, cluster) };
+  if (!cluster) return { ownerEnv: common, appEnv: common, cluster };
   const urls = databaseUrls(cluster);
-  if (env.NODE_ENV !== 'production' && !env.SESSION_SECRET) {
-    common.SESSION_SECRET = cluster.secrets.sessionSecret;
-  }
   return {
     ownerEnv: { ...common, DATABASE_URL: urls.owner, DATABASE_APP_URL: urls.app },
     appEnv: { ...common, DATABASE_APP_URL: urls.app },
     cluster,
   };
+}
+
+/**
+ * In production it is given; otherwise it is made once, so that people stay signed in through a restart.
+ * @param {string} storageDir
+ * @param {NodeJS.ProcessEnv} env
+ * @param {OpenDatabase['cluster']} cluster
+ */
+function sessionSecret(storageDir, env, cluster) {
+  if (env.NODE_ENV === 'production' || env.SESSION_SECRET) return {};
+  const kept = cluster?.secrets.sessionSecret ?? keptSessionSecret(startFiles(storageDir).sessionSecret);
+  return { SESSION_SECRET: kept };
 }
 
 /**

@@ -12,6 +12,7 @@ export function storageDirOf(env) {
 export function startFiles(storageDir) {
   return {
     secrets: path.join(storageDir, 'secrets.json'),
+    sessionSecret: path.join(storageDir, 'session-secret'),
     cluster: path.join(storageDir, 'cluster.json'),
     running: path.join(storageDir, 'running.json'),
     demoSignIns: path.join(storageDir, 'demo-sign-ins.json'),

@@ -35,6 +35,18 @@ export function makeSecrets(file) {
   return secrets;
 }
 
+/**
+ * The key of the sign-in cookies where the database is somebody else's and there are no passwords of ours to keep.
+ * @param {string} file
+ * @returns {string}
+ */
+export function keptSessionSecret(file) {
+  if (existsSync(file)) return readFileSync(file, 'utf8').trim();
+  const made = secret();
+  writeFileSafely(file, `${made}\n`, 0o600);
+  return made;
+}
+
 /** URL-safe on purpose: passwords go into connection addresses. */
 function secret() {
   return randomBytes(32).toString('base64url');

@@ -1,4 +1,4 @@
-import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import net from 'node:net';
 import os from 'node:os';
 import path from 'node:path';
@@ -11,7 +11,7 @@ import { checkPortFree, wantedPort } from '#server/start/ports.mjs';
 import { choosePostgres, findPostgres } from '#server/start/postgres-find.mjs';
 import { brokenFault, reasonIn } from '#server/start/postgres-postmaster.mjs';
 import { lastLines } from '#server/start/run-command.mjs';
-import { makeSecrets, readSecrets } from '#server/start/secrets.mjs';
+import { keptSessionSecret, makeSecrets, readSecrets } from '#server/start/secrets.mjs';
 import { closingLine, countOf } from '#server/start/test-count.mjs';
 
 let folder: string;
@@ -151,6 +151,15 @@ describe('the secrets', () => {
     expect(new Set(Object.values(made)).size).toBe(4);
     writeFileSync(at('secrets.json'), '{"ownerPassword": "half');
     expect(readSecrets(at('secrets.json'))).toBeNull();
+  });
+});
+
+describe('the key of the cookies beside a database of somebody else', () => {
+  it('is made once and kept to itself', () => {
+    const made = keptSessionSecret(at('session-secret'));
+    expect(made.length).toBeGreaterThanOrEqual(32);
+    expect(keptSessionSecret(at('session-secret'))).toBe(made);
+    expect(statSync(at('session-secret')).mode & 0o777).toBe(0o600);
   });
 });
 
