@@ -9,11 +9,12 @@ let personId: string | null = null;
 const listeners = new Set<(moment: SignInMoment) => void>();
 
 export const currentCsrfToken = (): string => csrfToken;
+/** Whose page this is, also after the session has ended: what is on it may go out under this name only. */
 export const currentPersonId = (): string | null => personId;
 
 export function rememberSession(session: { csrfToken: string; person: { id: string } | null }): void {
   csrfToken = session.csrfToken;
-  personId = session.person?.id ?? null;
+  personId = session.person?.id ?? personId;
 }
 
 export function announce(moment: SignInMoment): void {
