@@ -56,6 +56,31 @@ export async function findPageScan(file: string, pageNumber: number): Promise<Pa
   }
 }
 
+/** The fax pictures that a page's own resources name; none when the file cannot be read this way. */
+export async function findFaxPictures(
+  file: string,
+  pageNumber: number,
+): Promise<Array<Pick<PageScan, 'data' | 'widthPx' | 'heightPx' | 'inverted' | 'parameter'>>> {
+  try {
+    const document = await openOnce(file);
+    if (!document || document.isEncrypted) return [];
+    const pictures = document
+      .getPage(pageNumber - 1)
+      .node.Resources()
+      ?.lookupMaybe(PDFName.of('XObject'), PDFDict);
+    const streams = pictures?.keys().map((name) => pictures.lookup(name)) ?? [];
+    return streams
+      .filter((each) => each instanceof PDFRawStream)
+      .filter(({ dict }) => nameIn(dict, 'Subtype') === 'Image' && codingOf(dict) === 'fax')
+      .map(({ dict, contents: data }) => {
+        const size = { widthPx: numberIn(dict, 'Width', 0), heightPx: numberIn(dict, 'Height', 0) };
+        return { data, ...size, inverted: false, parameter: parameterOf(dict) };
+      });
+  } catch {
+    return [];
+  }
+}
+
 let lastOpened: { key: string; document: PDFDocument } | null = null;
 
 /** The pages of a file are asked for one after the other; reading it again for each would take longer than drawing. */
@@ -124,10 +149,13 @@ function describeScan(page: PDFPage, { name, rect }: PlacedPicture): PageScan | 
   if (dpi === null || !coding || !samples || inverted === null || turns === null) return null;
   if ((bits !== 1 && bits !== 8) || (bits === 1 && samples === 3)) return null;
   if (size.widthPx * size.heightPx > MAX_PIXELS) return null;
-  const parameters = dict.lookupMaybe(PDFName.of('DecodeParms'), PDFDict);
-  const parameter = (key: string, otherwise: number) =>
-    parameters ? numberIn(parameters, key, otherwise) : otherwise;
+  const parameter = parameterOf(dict);
   return { data, coding, ...size, samples, bits, inverted, turns, dpi, parameter };
+}
+
+function parameterOf(dict: PDFDict): PageScan['parameter'] {
+  const parameters = dict.lookupMaybe(PDFName.of('DecodeParms'), PDFDict);
+  return (name, otherwise) => (parameters ? numberIn(parameters, name, otherwise) : otherwise);
 }
 
 /** Resolution of a scan that covers the page to its edges with square pixels; null when it does not. */

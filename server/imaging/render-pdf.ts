@@ -36,8 +36,11 @@ export async function renderPdf(
   request: RenderRequest,
   onProgress: (share: number) => void,
 ): Promise<RenderedSheet> {
-  const asItIs = (await largestPicturePixels(request.file)) > 0 && (await renderAsScan(request, onProgress));
-  return asItIs || renderDrawn(request, onProgress);
+  const hasPictures = (await largestPicturePixels(request.file)) > 0;
+  const asItIs = hasPictures && (await renderAsScan(request, onProgress));
+  if (asItIs) return asItIs;
+  if (hasPictures) await refuseFaults(request);
+  return renderDrawn(request, onProgress);
 }
 
 /** Loaded when a file holds a picture at all: most of what it needs takes longer to load than to use. */
@@ -45,6 +48,11 @@ async function renderAsScan(request: RenderRequest, onProgress: (share: number) 
   const { findPageScan } = await import('./pdf-scan.ts');
   const scan = await findPageScan(request.file, request.pageNumber);
   return scan && renderScan(scan, request, onProgress);
+}
+
+async function refuseFaults({ file, pageNumber, outFolder }: RenderRequest): Promise<void> {
+  const { refuseShortFax } = await import('./fax-check.ts');
+  await refuseShortFax(file, pageNumber, `${outFolder}.fax`);
 }
 
 async function renderDrawn(

@@ -15,11 +15,14 @@ export async function writeScan(scan: PageScan, file: string): Promise<void> {
   else await writeInflated(scan, file);
 }
 
+/** A picture coded as fax machines do. */
+export type FaxPicture = Pick<PageScan, 'data' | 'widthPx' | 'heightPx' | 'inverted' | 'parameter'>;
+
 /**
  * Fax data put into a TIFF as they are. A PDF turns black runs into 0 unless `BlackIs1`, and shows 0 as black unless
  * `Decode` inverts; a TIFF with white as 0 shows black runs black.
  */
-async function writeFax(scan: PageScan, file: string): Promise<void> {
+export async function writeFax(scan: FaxPicture, file: string): Promise<void> {
   const isShownInverted = (scan.parameter('BlackIs1', 0) === 1) !== scan.inverted;
   const k = scan.parameter('K', 0);
   if (scan.parameter('Columns', 1728) !== scan.widthPx) throw new Error('the rows have another length');

@@ -2,12 +2,11 @@ import { readdir, rename, rm } from 'node:fs/promises';
 import path from 'node:path';
 import sharp, { type Sharp } from 'sharp';
 import { THUMBNAIL_PX, TILE_SIZE_PX } from '#shared/contract/limits.ts';
+import { countLostRows, isCutShort } from './lost-rows.ts';
 import { refusals } from './refusal.ts';
 import type { RenderedSheet, TileFormat } from './render-types.ts';
 
 const PROGRESS_MS = 400;
-/** Scanners now and then count a few rows too many. */
-const LOST_SHARE = 0.005;
 
 // Measured on a 28,000 × 20,000 px G4 sheet: PNG level 1 takes 4.5 s, level 6 6.5 s for a third less disk, WebP 49 s.
 // JPEG keeps full colour resolution, because red and blue lines a pixel wide fade under 4:2:0.
@@ -52,7 +51,7 @@ export async function writeTilePyramid(
   } finally {
     stop();
   }
-  if (lost.rows() > size.heightPx * LOST_SHARE)
+  if (isCutShort(lost.rows(), size.heightPx))
     throw refusals.damagedImage('fax data end before the page does');
   await rm(`${outFolder}.dzi`);
   await rm(path.join(filesFolder, 'vips-properties.xml'), { force: true });
@@ -62,18 +61,6 @@ export async function writeTilePyramid(
     .webp({ quality: 80 })
     .toFile(path.join(outFolder, 'thumbnail.webp'));
   return { maxZoom, tileSizePx: TILE_SIZE_PX, tileFormat: format };
-}
-
-/**
- * Fax data that end too early are no error to libtiff: it shows the rest of the page white and warns once for each
- * row. A page with its lower half gone would look like a good one.
- */
-function countLostRows(image: Sharp): { rows(): number } {
-  let rows = 0;
-  image.on('warning', (message: string) => {
-    if (message.startsWith('Premature EOF')) rows++;
-  });
-  return { rows: () => rows };
 }
 
 /** libvips tells nothing while it writes; the number of finished tiles does. */

@@ -229,6 +229,10 @@ describe('a PDF page that is one scan', () => {
     const whole = await data();
     const half = whole.subarray(0, whole.length >> 1);
     await expect(rendered(pdfOf({ data: half, picture }))).rejects.toMatchObject({ code: 'damaged' });
+    const stamped = plain + SPECK;
+    await expect(rendered(pdfOf({ data: half, picture, content: stamped }))).rejects.toMatchObject({
+      code: 'damaged',
+    });
   });
 
   it('whose data are damaged is refused, not shown in part', async () => {
