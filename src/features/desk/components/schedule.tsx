@@ -15,8 +15,6 @@ import {
   sortedPoints,
 } from './schedule-rows.ts';
 
-const CELL = 'border-b border-rule-2 px-2 py-[3px]';
-
 interface ScheduleProps {
   document: FlowNetDocument;
   reading: NetReading;
