@@ -33,7 +33,8 @@ describe('somebody who opens the address', () => {
 
   it('finds the server and its page again after a restart', async () => {
     const page = await browser.newPage();
-    await page.goto('/sign-in');
+    // What is still being fetched when the server goes would rightly be an error.
+    await page.goto('/sign-in', { waitUntil: 'networkidle' });
     await server.restart();
     await page.reload();
     await page.getByRole('button', { name: 'Sign in' }).waitFor();
