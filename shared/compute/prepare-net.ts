@@ -1,6 +1,10 @@
 import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
-import { questionLevels, questionPermeability } from '#shared/compute/net/input-questions.ts';
+import {
+  questionLevels,
+  questionPermeability,
+  questionUnitWeight,
+} from '#shared/compute/net/input-questions.ts';
 import { headsOf, type NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind } from '#shared/compute/net/net-lines.ts';
 import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
@@ -62,6 +66,7 @@ export function prepareNet(
     ...heads.findings,
     ...waterlineFindings(model, heads, map, inputs),
     ...questionLevels(water, model.potentials),
+    ...questionUnitWeight(water.gammaW, document.unitSystem),
     ...questionPermeability(permeability),
     ...channels.findings,
     ...quantityFindings,

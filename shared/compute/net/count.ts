@@ -45,6 +45,7 @@ export function countDrops(
   if (!(lost > 0)) return { ...nothing, findings: [noLoss()] };
   if (stated === null) return { ...nothing, findings: [notStated(tracedDrops)] };
   const headPerDrop = lost / stated;
+  if (!Number.isFinite(headPerDrop) || !(headPerDrop > 0)) return { ...nothing, findings: [outOfBounds()] };
   const marks = marksOf(sequence, headwater, headPerDrop, stated);
   const wrongs = disorder(sequence, marks, stated);
   if (wrongs.length > 0) return { ...nothing, findings: wrongs };
@@ -175,6 +176,15 @@ function noLoss(): Finding {
     'noHeadLost',
     'No head is lost from the headwater to the outlet: the outlet lies as high as the headwater or higher. Check both levels.',
     { cell: 'headwater' },
+  );
+}
+
+function outOfBounds(): Finding {
+  return makeFinding(
+    'wrong',
+    'countOutOfBounds',
+    'The head per drop cannot be worked out from these levels and this count. Check both.',
+    { cell: 'drops' },
   );
 }
 

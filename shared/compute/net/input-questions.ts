@@ -51,6 +51,23 @@ export function questionLevels(water: EntityOf<'waterLevels'>, potentials: reado
   return findings;
 }
 
+/**
+ * Questions a unit weight of water that belongs to the other unit system or to no water: outside 9.7 to 10.4 kN/m³
+ * (62 to 66 lb/ft³), the range from warm fresh water to sea water.
+ */
+export function questionUnitWeight(gammaW: number, system: UnitSystem): Finding[] {
+  const [least, greatest, unit] = system === 'SI' ? [9.7, 10.4, 'kN/m³'] : [62, 66, 'lb/ft³'];
+  if (gammaW >= least && gammaW <= greatest) return [];
+  return [
+    makeFinding(
+      'question',
+      'unitWeightImplausible',
+      `The unit weight of water is entered as ${gammaW} ${unit}; water lies between ${least} and ${greatest}. Check the figure and its unit.`,
+      { cell: 'headwater' },
+    ),
+  ];
+}
+
 /** Questions a permeability outside 10⁻¹³ to 1 m/s, whatever its unit; says when none is entered. */
 export function questionPermeability(permeability: EntityOf<'permeability'>): Finding[] {
   if (permeability.k === null) {

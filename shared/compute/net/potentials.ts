@@ -54,7 +54,14 @@ export function potentialsOf(
     if ('id' in found) all.push(found);
     else findings.push(found.finding);
   }
-  return { all, findings: [...findings, ...missingSides(all, marked, water)] };
+  return { all, findings: [...onceEach(findings), ...missingSides(marked, water)] };
+}
+
+/** A level that is missing is asked for once, however many faces want it. */
+function onceEach(findings: readonly Finding[]): Finding[] {
+  return findings.filter(
+    (found, i) => found.weight !== 'missing' || findings.findIndex((each) => each.code === found.code) === i,
+  );
 }
 
 /** Elevation of a place on the sheet, base-raster pixels to document length unit. */
@@ -130,7 +137,7 @@ function freeOrHeld(
   const held = line.kind === 'drain' ? line.value.head : null;
   if (held !== null) return { ...base, level: held, outHead: held };
   const { low, high, mean } = elevationsAlong(line.shape, map);
-  if (!Number.isFinite(low) || !Number.isFinite(high)) {
+  if (![low, high, mean].every(Number.isFinite)) {
     return problem(
       line,
       'wrong',
@@ -167,7 +174,7 @@ function elevationsAlong(shape: Polyline, map: SectionMap): { low: number; high:
   return { low, high, mean: moment / lengthOf(shape) };
 }
 
-function missingSides(all: readonly Potential[], marked: readonly NetLine[], water: WaterLevels): Finding[] {
+function missingSides(marked: readonly NetLine[], water: WaterLevels): Finding[] {
   const findings: Finding[] = [];
   const hasLine = (wanted: string | null, kinds: readonly string[]) =>
     marked.some(
@@ -197,7 +204,7 @@ function missingSides(all: readonly Potential[], marked: readonly NetLine[], wat
       ),
     );
   }
-  if (water.headwater === null && !all.some((potential) => potential.role === 'headwater')) {
+  if (water.headwater === null && !hasLine('headwater', ['submergedFace'])) {
     findings.push(
       makeFinding('missing', 'headwaterMissing', 'Type the headwater level of this load case.', {
         cell: 'headwater',
