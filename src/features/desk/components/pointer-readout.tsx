@@ -17,7 +17,12 @@ export function PointerReadout({ store }: { store: DeskStore }) {
   if (at === null) return null;
   const words = wordsAt(at, document, setOut);
   return (
-    <div data-over-sheet className="flex gap-4 rounded-sheet border border-rule bg-film px-2.5 py-1">
+    // Spoken at every movement of the pointer it would drown everything else.
+    <output
+      data-over-sheet
+      aria-live="off"
+      className="flex gap-4 rounded-sheet border border-rule bg-film px-2.5 py-1"
+    >
       {words === null ? (
         <span>{text.pixels(at[0], at[1])}</span>
       ) : (
@@ -26,7 +31,7 @@ export function PointerReadout({ store }: { store: DeskStore }) {
           <span>{text.elevation(words)}</span>
         </>
       )}
-    </div>
+    </output>
   );
 }
 
