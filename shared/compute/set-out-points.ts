@@ -43,7 +43,7 @@ export function fitByPoints(points: readonly KnownPoint[], setOut: EntityOf<'set
   const mirrored = fitSimilarity(pairs, true);
   if (direct === null || mirrored === null || !usable(direct) || !usable(mirrored)) return coincident(used);
   const settled = settledByResiduals(pairs, direct, mirrored);
-  if (settled !== null) return { state: 'fitted', similarity: settled, fitPoints: pairs.length };
+  if (settled !== null) return heldAgainstAnswers(settled, setOut, pairs.length);
   return settleByUp(direct, mirrored, setOut, pairs.length);
 }
 
@@ -104,6 +104,15 @@ function settledByResiduals(
   if (Math.sqrt(worse / pairs.length) < 0.01 * extent) return null;
   if (Math.min(directSquares, mirroredSquares) > worse / 9) return null;
   return directSquares < mirroredSquares ? direct : mirrored;
+}
+
+/** What the points settle by themselves must still agree with the way that is up and the side said: a slip shows there. */
+function heldAgainstAnswers(settled: Similarity, setOut: EntityOf<'setOut'>, fitPoints: number): SetOutFit {
+  if (departureFromUp(settled, setOut) > UPRIGHT_LIMIT)
+    return setOut.upQuarterTurns === null ? askUp() : contradiction();
+  if (setOut.offsetsGrow !== null && (setOut.offsetsGrow === 'left') !== settled.mirrored)
+    return contradiction();
+  return { state: 'fitted', similarity: settled, fitPoints };
 }
 
 function settleByUp(

@@ -11,10 +11,13 @@ import {
 import { metresPerLengthUnit } from '#shared/compute/units.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, SetOutReading } from '#shared/contract/reading.ts';
+import { fixedText } from '#shared/text/number-text.ts';
 
 const METRES_PER_INCH = 0.0254;
 /** A stated drawing scale is questioned when the fit departs from it by more than this part. */
 const SCALE_TOLERANCE = 0.02;
+/** A residual is questioned beyond this part of the extent of the known points; paper shrinks by less. */
+const RESIDUAL_PART = 0.01;
 
 export type SetOut = {
   reading: SetOutReading;
@@ -87,7 +90,10 @@ function withMap(
   if (!figures.every((figure) => figure === null || Number.isFinite(figure))) {
     return withoutMap('refused', tooLarge());
   }
-  const findings = scaleFindings(impliedScale, statedScale);
+  const findings = [
+    ...scaleFindings(impliedScale, statedScale),
+    ...residualFindings(document, residual, unitsPerPx),
+  ];
   return {
     reading: {
       state: 'fitted',
@@ -130,6 +136,23 @@ function residualsOf(document: FlowNetDocument, similarity: Similarity, fitPoint
     counted += 1;
   }
   return { residuals, residual: counted === 0 ? null : Math.sqrt(square / counted) };
+}
+
+/** One mistyped point among several shows in the residual alone: the fit spreads its error over all of them. */
+function residualFindings(document: FlowNetDocument, residual: number | null, unitsPerPx: number): Finding[] {
+  const places = entitiesOf(document, 'knownPoint').map(({ value }) => value.at);
+  const range = (axis: 0 | 1) =>
+    Math.max(...places.map((at) => at[axis])) - Math.min(...places.map((at) => at[axis]));
+  if (residual === null || residual <= RESIDUAL_PART * Math.hypot(range(0), range(1)) * unitsPerPx) return [];
+  const unit = document.unitSystem === 'SI' ? 'm' : 'ft';
+  return [
+    makeFinding(
+      'question',
+      'residualLarge',
+      `The known points disagree by ${fixedText(residual, 2)} ${unit}, more than a hundredth of the distance between them. Check the typed values, the places clicked and whether both directions have one scale.`,
+      { cell: 'residual' },
+    ),
+  ];
 }
 
 function scaleFindings(impliedScale: number | null, statedScale: number | null): Finding[] {

@@ -1,5 +1,5 @@
 import { distanceToRing, ringContains } from '#shared/compute/geometry/polygon.ts';
-import type { Polyline } from '#shared/compute/geometry/polyline.ts';
+import { nearestOnPolyline, type Polyline } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { wayToLine } from '#shared/compute/net/shortest-way.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
@@ -41,6 +41,25 @@ export function stripAt(strips: readonly Strip[], at: Pair, slack: number): Stri
     }
   }
   return best;
+}
+
+/**
+ * True when a place lies so near a thin wall that its side hangs on the tremor of the tracing: within `slack` of a wall
+ * and of two strips that have no line in common, as on the two faces of a sheet pile. Base-raster pixels.
+ */
+export function straddlesWall(
+  strips: readonly Strip[],
+  read: Strip,
+  at: Pair,
+  walls: readonly Polyline[],
+  slack: number,
+): boolean {
+  if (!walls.some((wall) => nearestOnPolyline(wall, at[0], at[1]).distance <= slack)) return false;
+  const lines = [read.before, read.after];
+  return strips.some(
+    ({ before, after, ring }) =>
+      !lines.includes(before) && !lines.includes(after) && distanceToRing(ring, at[0], at[1]) <= slack,
+  );
 }
 
 /**

@@ -170,6 +170,7 @@ function orderFindings(
       'Two equipotentials follow on the same line. Trace them as one line, or say their heads.',
       sideBySide(order),
     ),
+    ...(reached ? leftOut(order, equipotentials, potentials) : []),
     ...(reached || order.deadEnds.length > 0
       ? []
       : [
@@ -183,6 +184,32 @@ function orderFindings(
           ),
         ]),
   ];
+}
+
+/**
+ * Drains and faces of free outflow that take no part though the flow reaches another outlet: a net drawn without the
+ * drain holds for a section without it. One along which equipotentials end does take part.
+ */
+function leftOut(
+  order: FlowOrder,
+  equipotentials: readonly Equipotential[],
+  potentials: readonly Potential[],
+): Finding[] {
+  const bearsFoot = (id: string) =>
+    equipotentials.some(({ footed }) => footed.start?.carrier.id === id || footed.end?.carrier.id === id);
+  return potentials
+    .filter(
+      ({ id, role, line }) =>
+        role === 'outlet' && line.kind !== 'submergedFace' && !order.place.has(id) && !bearsFoot(id),
+    )
+    .map(({ members, label, line }) =>
+      makeFinding(
+        'wrong',
+        'outletLeftOut',
+        `The flow does not reach ${label}, so that the net leaves it out. Trace the equipotentials that lead to it, or take it away if it draws no water.`,
+        { cell: 'outlet', entityIds: members, at: line.value.points[0] ?? null },
+      ),
+    );
 }
 
 /** Equipotentials that share their place in the order with another one. */

@@ -2,7 +2,7 @@ import { makeFinding } from '#shared/compute/findings.ts';
 import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
 import { nearestOnPolyline, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
 import { liesAbovePhreatic } from '#shared/compute/net/above-phreatic.ts';
-import { type HandReading, readByHand, stripAt } from '#shared/compute/net/hand-rule.ts';
+import { type HandReading, readByHand, straddlesWall, stripAt } from '#shared/compute/net/hand-rule.ts';
 import { type HeadOfLine, headWhere, type NetHeads } from '#shared/compute/net/net-heads.ts';
 import { provisionalDoubt } from '#shared/compute/net/provisional-doubt.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
@@ -174,7 +174,11 @@ function withFigures(
     explanation: onFreeFace
       ? `On the face of free outflow the total head is the elevation, ${fixedText(elevation, 2)}.`
       : explain(before, after, hand.fraction, headBefore, headAfter, totalHead, dropsLost, ground.unequal),
-    findings: [...negativePressure(point, pressureHead, sheetAt), ...nearOpenEnd(point, sheetAt, hand)],
+    findings: [
+      ...negativePressure(point, pressureHead, sheetAt),
+      ...nearOpenEnd(point, sheetAt, hand),
+      ...onThinWall(point, sheetAt, hand, ground),
+    ],
   };
 }
 
@@ -226,6 +230,19 @@ function nearOpenEnd(point: PlacedPoint, at: SheetPx, hand: HandReading): Findin
       'note',
       'nearOpenEnd',
       'The point lies within a cell of an end at which no boundary is traced. Trace the boundary or the outermost flow line there.',
+      { cell: 'netCheck', entityIds: [point.id], at },
+    ),
+  ];
+}
+
+/** Head jumps across a thin wall, and the hand's tremor decides on which side of it such a point comes to lie. */
+function onThinWall(point: PlacedPoint, at: SheetPx, hand: HandReading, ground: ReadingGround): Finding[] {
+  if (!straddlesWall(ground.strips, hand.strip, at, ground.walls, ground.slack)) return [];
+  return [
+    makeFinding(
+      'question',
+      'onThinWall',
+      'The point lies on a thin wall, nearer than the tracing can tell its two sides apart, and the head differs from side to side. Move it clear of the wall, to the side that is meant.',
       { cell: 'netCheck', entityIds: [point.id], at },
     ),
   ];

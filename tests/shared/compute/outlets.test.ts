@@ -1,11 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { readNet } from '#shared/compute/read-net.ts';
+import { entitiesOf } from '#shared/contract/document.ts';
 import { changed, withAdded, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 import { freeOutflowNet } from '#tests/support/exact-nets/free-outflow-net.ts';
 
-const [parabola, , pile] = EXACT_NETS as [
+const [parabola, apron, pile] = EXACT_NETS as [
   (typeof EXACT_NETS)[number],
   (typeof EXACT_NETS)[number],
   (typeof EXACT_NETS)[number],
@@ -64,6 +65,30 @@ describe('a drain', () => {
       (found) => found.code,
     );
     expect(codes).toContain('outletAboveHeadwater');
+  });
+});
+
+describe('a drain that the flow does not reach', () => {
+  it('withholds the figures of a net that was drawn without it', () => {
+    const net = exactNetDocument(apron.net, {
+      pxPerUnit: apron.pxPerUnit,
+      readings: [
+        { at: [0, 95], clicked: true },
+        { at: [0, 98], clicked: true },
+      ],
+    });
+    expect(readNet(net).state).toBe('read');
+    const places = entitiesOf(net, 'readingPoint').map(({ value }) =>
+      value.place.on === 'sheet' ? value.place.at : null,
+    );
+    const well = { kind: 'line', line: 'drain', name: 'Well 3', finished: true } as const;
+    const points = places.filter((place) => place !== null);
+    const reading = readNet(withAdded(net, { ...well, points, water: null, head: null, drops: null }));
+    expect(reading.findings.find((found) => found.weight === 'wrong')).toMatchObject({
+      code: 'outletLeftOut',
+      text: expect.stringContaining('Well 3'),
+    });
+    expect(reading.points.map((point) => point.porePressure)).toEqual([null, null]);
   });
 });
 

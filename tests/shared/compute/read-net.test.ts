@@ -74,6 +74,8 @@ describe('a net that is not finished gives no figure and says why', () => {
       changed(parabolaNet(), 'waterLevels', (value) => ({ ...value, headwater: null })),
       'headwaterMissing',
     );
+    const levelless = changed(parabolaNet(), 'waterLevels', (value) => ({ ...value, headwater: null }));
+    expect(codesOf(readNet(levelless)).filter((code) => code === 'headwaterMissing')).toHaveLength(1);
     const bed = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit });
     expectWithheld(
       changed(bed, 'waterLevels', (value) => ({ ...value, tailwater: null })),
@@ -296,6 +298,14 @@ describe('a point', () => {
     expect(points.map((point) => point.findings.map((found) => found.code))).toEqual([['nearOpenEnd'], []]);
   });
 
+  it('on a thin wall is questioned, as either side could be meant', () => {
+    const { net, pxPerUnit } = pile;
+    const readings: RandomReading[] = [-0.5, 0, 0.5].map((offset) => ({ at: [offset, 95], clicked: true }));
+    const { points } = readNet(exactNetDocument(net, { pxPerUnit, readings }));
+    const codes = points.map((point) => point.findings.map((found) => found.code));
+    expect(codes).toEqual([[], ['onThinWall'], []]);
+  });
+
   it('beside a wall is read on its own side', () => {
     const { net, pxPerUnit } = pile;
     const readings: RandomReading[] = [
@@ -318,6 +328,12 @@ describe('implausible inputs are questioned but not refused', () => {
     );
     expect(codesOf(reading)).toContain('permeabilityImplausible');
     expect(reading.state).toBe('read');
+  });
+
+  it('a unit weight of water of the other unit system', () => {
+    const reading = readNet(changed(parabolaNet(), 'waterLevels', (value) => ({ ...value, gammaW: 62.4 })));
+    expect(codesOf(reading)).toContain('unitWeightImplausible');
+    expect(codesOf(readNet(parabolaNet()))).not.toContain('unitWeightImplausible');
   });
 
   it('channels stated otherwise than traced', () => {

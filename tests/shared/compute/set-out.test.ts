@@ -106,6 +106,37 @@ describe('setting out: what is missing or doubtful is asked for', () => {
   });
 });
 
+describe('setting out by three known points questions what does not go together', () => {
+  const corners = [known(0, 1000, 0, 100), known(2000, 1000, 50, 100), known(0, 0, 0, 125)];
+
+  it('offset and elevation typed into one another lay the section on its side', () => {
+    const swapped = corners.map((point) => ({
+      ...point,
+      offset: point.elevation!,
+      elevation: point.offset!,
+    }));
+    const reading = readSetOut(sectionOf(swapped));
+    expect(reading.reading.state).toBe('ambiguous');
+    expect(reading.findings[0]?.code).toBe('upUnknown');
+  });
+
+  it('depths typed for elevations stand it on its head', () => {
+    const depths = corners.map((point) => ({ ...point, elevation: -point.elevation! }));
+    expect(readSetOut(sectionOf(depths)).findings[0]?.code).toBe('upUnknown');
+  });
+
+  it('a side said that the points deny', () => {
+    expect(readSetOut(sectionOf(corners, { offsetsGrow: 'right' })).reading.state).toBe('fitted');
+    expect(readSetOut(sectionOf(corners, { offsetsGrow: 'left' })).reading.state).toBe('refused');
+  });
+
+  it('one value mistyped among three', () => {
+    const codes = (points: Known[]) => readSetOut(sectionOf(points)).findings.map((found) => found.code);
+    expect(codes(corners)).toEqual([]);
+    expect(codes([corners[0]!, corners[1]!, known(0, 0, 0, 130)])).toEqual(['residualLarge']);
+  });
+});
+
 describe('setting out by known points', () => {
   it('finds scale, rotation and a probe from two points (published check 7-01, complex algebra)', () => {
     const { reading, map } = readSetOut(sectionOf([known(412, 1310, 0, 100), known(2860, 1262, 61.2, 100)]));
