@@ -4,6 +4,7 @@ import { linesOfKind, netLinesOf } from '#shared/compute/net/net-lines.ts';
 import type { NetModel } from '#shared/compute/net/net-model.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, readPoint, withholdPoint } from '#shared/compute/net/read-point.ts';
+import { findTangles } from '#shared/compute/net/tangles.ts';
 import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
@@ -22,17 +23,20 @@ export function readNet(document: FlowNetDocument): NetReading {
   const inputs = singleInputs(document);
   const setOut = readSetOut(document);
   const points = placedPoints(document, setOut.map);
-  if (setOut.map === null) return withoutSetOut(document, setOut, inputs, points);
+  const tangles = findTangles(netLinesOf(document), inputs.count.tracingAccuracyPx);
+  // Nothing is worked out from a tangle: it would take its time over every crossing, and come to nothing.
+  if (setOut.map === null || tangles.length > 0) return withoutNet(document, setOut, tangles, inputs, points);
   return readOnSection(document, setOut, setOut.map, inputs, points);
 }
 
-function withoutSetOut(
+function withoutNet(
   document: FlowNetDocument,
   setOut: SetOut,
+  tangles: readonly Finding[],
   inputs: SingleInputs,
   points: readonly PlacedPoint[],
 ): NetReading {
-  const findings = [...setOut.findings, ...questionPermeability(inputs.permeability)];
+  const findings = [...setOut.findings, ...tangles, ...questionPermeability(inputs.permeability)];
   return {
     state: 'unfinished',
     findings,

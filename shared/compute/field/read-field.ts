@@ -3,9 +3,11 @@ import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { liesAbovePhreatic } from '#shared/compute/net/above-phreatic.ts';
 import { stripAt } from '#shared/compute/net/hand-rule.ts';
 import type { HeadOfLine } from '#shared/compute/net/net-heads.ts';
+import { netLinesOf } from '#shared/compute/net/net-lines.ts';
 import { elevationAt } from '#shared/compute/net/potentials.ts';
 import type { ReadingGround } from '#shared/compute/net/read-point.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
+import { findTangles } from '#shared/compute/net/tangles.ts';
 import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
 import { singleInputs } from '#shared/compute/single-inputs.ts';
@@ -29,8 +31,9 @@ export type FieldReading = {
 export function readField(document: FlowNetDocument): FieldReading[] {
   const setOut = readSetOut(document);
   const points = placedPoints(document, setOut.map);
-  const prepared =
-    setOut.map === null ? null : prepareNet(document, setOut, setOut.map, singleInputs(document));
+  const inputs = singleInputs(document);
+  const tangled = findTangles(netLinesOf(document), inputs.count.tracingAccuracyPx).length > 0;
+  const prepared = setOut.map === null || tangled ? null : prepareNet(document, setOut, setOut.map, inputs);
   if (prepared === null || !prepared.finished) {
     return points.map(({ id }) => ({ id, totalHead: null, dropsLost: null }));
   }

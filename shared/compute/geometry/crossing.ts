@@ -10,16 +10,27 @@ export type Crossing = { readonly s: number; readonly t: number; readonly at: Pa
  * along one another give one place, the middle of the overlap being close enough for every use made of it.
  */
 export function crossingsOf(first: Polyline, second: Polyline): Crossing[] {
-  if (!boxesMeet(first.box, second.box)) return [];
+  const found = meetingsOf(first, second, Number.POSITIVE_INFINITY);
+  found.sort((a, b) => a.s - b.s);
+  return found.filter((crossing, i) => i === 0 || !sameCrossing(crossing, found[i - 1]!));
+}
+
+/** How often segments of two polylines meet, a place at a vertex counted for each segment; counts no further than `most`. */
+export function countMeetings(first: Polyline, second: Polyline, most: number): number {
+  return Math.min(most, meetingsOf(first, second, most).length);
+}
+
+function meetingsOf(first: Polyline, second: Polyline, most: number): Crossing[] {
   const found: Crossing[] = [];
+  if (!boxesMeet(first.box, second.box)) return found;
   for (let p = 0; 4 * p < first.runs.length; p += 1) {
     if (!runMeetsBox(first, p, second.box)) continue;
     for (let q = 0; 4 * q < second.runs.length; q += 1) {
       if (runsMeet(first.runs, p, second.runs, q)) crossRuns(first, p, second, q, found);
+      if (found.length >= most) return found;
     }
   }
-  found.sort((a, b) => a.s - b.s);
-  return found.filter((crossing, i) => i === 0 || !sameCrossing(crossing, found[i - 1]!));
+  return found;
 }
 
 function crossRuns(first: Polyline, p: number, second: Polyline, q: number, found: Crossing[]): void {

@@ -1,0 +1,99 @@
+import { type Polyline, RUN, vertexOf } from '#shared/compute/geometry/polyline.ts';
+import { orientation, type Pair } from '#shared/compute/geometry/predicates.ts';
+
+/** Where a polyline crosses itself: the distances along it at which it passes the place, `s` < `t`, and the place. */
+export type SelfCrossing = { readonly s: number; readonly t: number; readonly at: Pair };
+
+/**
+ * A place at which a polyline crosses itself and does not merely touch itself or run back along itself; null when there
+ * is none. A loop of no more than `slack` mean width is the tremor of the hand, or a thin wall outlined down one side
+ * and up the other, and passes; of such loops there may be as many as the line has segments. `isWanted` may pass over
+ * others. One frame; crossings are decided exactly. Runs of segments whose boxes are apart are never compared, so that
+ * an ordinary line costs no more than its length.
+ */
+export function selfCrossingOf(
+  line: Polyline,
+  slack: number,
+  isWanted: (crossing: SelfCrossing) => boolean = () => true,
+): SelfCrossing | null {
+  const segments = line.cum.length - 1;
+  const moments = momentsOf(line);
+  let narrow = 0;
+  for (const [i, j] of meetingRuns(line, segments)) {
+    const crossing = properCrossing(line, i, j);
+    if (crossing === null || !isWanted(crossing)) continue;
+    if (meanWidth(line, moments, crossing, i, j) > slack) return crossing;
+    narrow += 1;
+    if (narrow > segments) return crossing;
+  }
+  return null;
+}
+
+/** Pairs of segments, the first before the second and not its neighbour, of runs whose boxes meet. */
+function* meetingRuns({ runs }: Polyline, segments: number): Generator<readonly [number, number]> {
+  const count = runs.length / 4;
+  for (let p = 0; p < count; p += 1) {
+    for (let q = p; q < count; q += 1) {
+      if (runs[4 * p]! > runs[4 * q + 2]! || runs[4 * p + 2]! < runs[4 * q]!) continue;
+      if (runs[4 * p + 1]! > runs[4 * q + 3]! || runs[4 * p + 3]! < runs[4 * q + 1]!) continue;
+      const lastI = Math.min(segments, (p + 1) * RUN);
+      const lastJ = Math.min(segments, (q + 1) * RUN);
+      for (let i = p * RUN; i < lastI; i += 1) {
+        for (let j = Math.max(i + 2, q * RUN); j < lastJ; j += 1) yield [i, j];
+      }
+    }
+  }
+}
+
+/** Where two segments cross, each passing from one side of the other to its other side; null when they do not. */
+function properCrossing(line: Polyline, i: number, j: number): SelfCrossing | null {
+  const { xy, cum } = line;
+  const [ax, ay, bx, by] = [xy[2 * i]!, xy[2 * i + 1]!, xy[2 * i + 2]!, xy[2 * i + 3]!];
+  const [cx, cy, dx, dy] = [xy[2 * j]!, xy[2 * j + 1]!, xy[2 * j + 2]!, xy[2 * j + 3]!];
+  if (Math.max(cx, dx) < Math.min(ax, bx) || Math.min(cx, dx) > Math.max(ax, bx)) return null;
+  if (Math.max(cy, dy) < Math.min(ay, by) || Math.min(cy, dy) > Math.max(ay, by)) return null;
+  if (orientation(ax, ay, bx, by, cx, cy) * orientation(ax, ay, bx, by, dx, dy) >= 0) return null;
+  if (orientation(cx, cy, dx, dy, ax, ay) * orientation(cx, cy, dx, dy, bx, by) >= 0) return null;
+  const cross = (bx - ax) * (dy - cy) - (by - ay) * (dx - cx);
+  const t = held(((cx - ax) * (dy - cy) - (cy - ay) * (dx - cx)) / cross);
+  const u = held(((cx - ax) * (by - ay) - (cy - ay) * (bx - ax)) / cross);
+  return {
+    s: cum[i]! + t * (cum[i + 1]! - cum[i]!),
+    t: cum[j]! + u * (cum[j + 1]! - cum[j]!),
+    at: [ax + t * (bx - ax), ay + t * (by - ay)],
+  };
+}
+
+/** The part 0 to 1; a half where rounding leaves no figure. */
+function held(part: number): number {
+  return Number.isFinite(part) ? Math.min(1, Math.max(0, part)) : 0.5;
+}
+
+/** Twice the area swept about the first vertex up to each vertex. */
+function momentsOf(line: Polyline): Float64Array {
+  const moments = new Float64Array(line.cum.length);
+  for (let i = 1; i < moments.length; i += 1) {
+    moments[i] = moments[i - 1]! + swept(line, vertexOf(line, i - 1), vertexOf(line, i));
+  }
+  return moments;
+}
+
+function swept(line: Polyline, a: Pair, b: Pair): number {
+  const [x, y] = vertexOf(line, 0);
+  return (a[0] - x) * (b[1] - y) - (b[0] - x) * (a[1] - y);
+}
+
+/** Area of a loop over half its length: the width of the strip that it would be if it were a narrow one. */
+function meanWidth(
+  line: Polyline,
+  moments: Float64Array,
+  { s, t, at }: SelfCrossing,
+  i: number,
+  j: number,
+): number {
+  const twice =
+    swept(line, at, vertexOf(line, i + 1)) +
+    (moments[j]! - moments[i + 1]!) +
+    swept(line, vertexOf(line, j), at);
+  return Math.abs(twice) / (t - s);
+}
