@@ -11,6 +11,8 @@ export default defineConfig({
     outDir: 'dist/client',
     emptyOutDir: true,
     target: 'es2022',
+    // Every browser of that target knows modulepreload.
+    modulePreload: { polyfill: false },
     // Sizes are watched by `npm run bench -- --only first-load`.
     reportCompressedSize: false,
   },

@@ -14,6 +14,7 @@ export const problemText = {
     'Something in the page went wrong. Reload it; work that was not sent yet is kept in this browser.',
   reload: 'Reload the page',
   tryAgain: 'Try again',
+  linkInvalid: 'This link does not work',
   toDams: 'Go to your dams',
   notFoundTitle: 'Not found',
   notFound: 'There is nothing at this address, or you have no part on the dam it belongs to.',

@@ -29,7 +29,6 @@ export const sessionText = {
     dam ? `${inviter} invites you to ${dam}.` : `${inviter} invites you.`,
   invitationFor: 'For',
   accept: 'Accept and sign in',
-  linkInvalid: 'This link does not work',
   invitationInvalid:
     'The invitation was used already, has expired, or the address was not copied whole. Ask for a new one.',
   toSignIn: 'Go to the sign-in page',
@@ -46,11 +45,6 @@ export const sessionText = {
   resetInvalid: 'The link was used already, has expired, or was not copied whole.',
   askAgain: 'Ask for a new link',
 
-  accountTitle: 'Your account',
-  accountMenu: (initials: string, name: string) => `${initials}, account of ${name}`,
-  people: 'People',
-  mails: 'Mails',
-  signOut: 'Sign out',
   nameSaved: 'The name is saved.',
   changePassword: 'Change the password',
   passwordChanged: 'The password is changed. Other browsers have been signed out.',
@@ -58,5 +52,4 @@ export const sessionText = {
   endAllLead:
     'Ends your sign-in in every browser, this one too. Do this when a computer with your sign-in was lost.',
   endAll: 'Sign out everywhere',
-  admin: 'administrator',
 } as const;

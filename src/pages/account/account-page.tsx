@@ -6,6 +6,7 @@ import {
   PasswordForm,
 } from '#client/features/session/components/account-forms.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
+import { accountMenuText } from '#client/text/account-menu.ts';
 import { sessionText as text } from '#client/text/session.ts';
 import { AppFrame } from '../app-frame.tsx';
 
@@ -13,8 +14,13 @@ export function AccountPage() {
   const { person } = useSession();
   if (!person) return null;
   return (
-    <AppFrame trail={[{ label: text.accountTitle }]}>
-      <Page title={text.accountTitle} heading={text.accountTitle} lead={person.email} narrow>
+    <AppFrame trail={[{ label: accountMenuText.accountTitle }]}>
+      <Page
+        title={accountMenuText.accountTitle}
+        heading={accountMenuText.accountTitle}
+        lead={person.email}
+        narrow
+      >
         <div className="flex flex-col gap-4">
           <Panel title={text.name}>
             <div className="p-3.5">

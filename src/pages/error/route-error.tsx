@@ -8,7 +8,6 @@ import { ApiProblem } from '#client/lib/api-problem.ts';
 import { paths } from '#client/lib/paths.ts';
 import { onSignInMoment } from '#client/lib/sign-in-state.ts';
 import { problemText as text } from '#client/text/problems.ts';
-import { sessionText } from '#client/text/session.ts';
 import { NotFoundPage } from './not-found-page.tsx';
 
 /** What a page shows in place of itself when it could not be loaded or failed: what happened, what to do, the request number. */
@@ -18,7 +17,7 @@ export function RouteError() {
   useEffect(() => onSignInMoment((moment) => moment === 'signedIn' && retry()), [retry]);
   if (isNotFound(error)) return <NotFoundPage />;
   if (error instanceof ApiProblem && error.code === 'token-invalid')
-    return <Failed title={sessionText.linkInvalid} detail={error.message} error={error} retry={retry} />;
+    return <Failed title={text.linkInvalid} detail={error.message} error={error} retry={retry} />;
   if (error instanceof ApiProblem)
     return <Failed title={error.problem.title} detail={error.message} error={error} retry={retry} />;
   if (isMissingScript(error))

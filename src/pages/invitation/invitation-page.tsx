@@ -2,6 +2,7 @@ import { Link, useLocation, useNavigate } from 'react-router-dom';
 import { InvitationForm } from '#client/features/session/components/invitation-form.tsx';
 import { PublicLayout } from '#client/layouts/public-layout.tsx';
 import { paths } from '#client/lib/paths.ts';
+import { problemText } from '#client/text/problems.ts';
 import { sessionText as text } from '#client/text/session.ts';
 
 /** The token stands in the fragment, which no browser sends and no log keeps. */
@@ -23,7 +24,7 @@ export function InvitationPage() {
 
 export function InvitationInvalid() {
   return (
-    <PublicLayout title={text.linkInvalid}>
+    <PublicLayout title={problemText.linkInvalid}>
       <p className="mb-3">{text.invitationInvalid}</p>
       <p>
         <Link to={paths.signIn}>{text.toSignIn}</Link>

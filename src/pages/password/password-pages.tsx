@@ -3,6 +3,7 @@ import { Link, useLocation } from 'react-router-dom';
 import { ResetRequestForm, SetPasswordForm } from '#client/features/session/components/reset-forms.tsx';
 import { PublicLayout } from '#client/layouts/public-layout.tsx';
 import { paths } from '#client/lib/paths.ts';
+import { problemText } from '#client/text/problems.ts';
 import { sessionText as text } from '#client/text/session.ts';
 
 export function ForgotPasswordPage() {
@@ -31,7 +32,7 @@ export function ResetPasswordPage() {
     );
   if (token === '')
     return (
-      <PublicLayout title={text.linkInvalid}>
+      <PublicLayout title={problemText.linkInvalid}>
         <p className="mb-3">{text.resetInvalid}</p>
         <Link to={paths.forgotPassword}>{text.askAgain}</Link>
       </PublicLayout>

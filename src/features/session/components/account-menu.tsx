@@ -2,7 +2,7 @@ import { Link } from 'react-router-dom';
 import { Menu, menuItemClass } from '#client/components/menu.tsx';
 import { initialsOf } from '#client/lib/initials.ts';
 import { paths } from '#client/lib/paths.ts';
-import { sessionText as text } from '#client/text/session.ts';
+import { accountMenuText as text } from '#client/text/account-menu.ts';
 import { signOut } from '../api/sign-out.ts';
 import { useSession } from '../hooks/use-session.ts';
 

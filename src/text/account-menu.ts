@@ -1,0 +1,9 @@
+/** Words of the account's menu, which every page shows. */
+export const accountMenuText = {
+  accountTitle: 'Your account',
+  accountMenu: (initials: string, name: string) => `${initials}, account of ${name}`,
+  people: 'People',
+  mails: 'Mails',
+  signOut: 'Sign out',
+  admin: 'administrator',
+} as const;
