@@ -21,7 +21,6 @@ export const sendingText = {
   messageHint: 'May stay empty.',
   send: 'Send',
   sent: (label: string, name: string) => `Revision ${label} has been sent to ${name}.`,
-  changedSince: 'Somebody changed the net meanwhile. Look at it again before you send it.',
 } as const;
 
 export const checkText = {
@@ -54,7 +53,6 @@ export const checkText = {
   historyEmpty: 'This net has not been sent for checking yet.',
   state: { accepted: 'accepted', returned: 'returned', waiting: 'waiting' },
   present: 'shown here',
-  notesTitle: 'Notes',
   downloadCsv: 'Download CSV',
   panes: { sheet: 'Sheet', schedule: 'Schedule', notes: 'Notes', check: 'Check' },
 } as const;

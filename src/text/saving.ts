@@ -24,7 +24,6 @@ export const savingText = {
   removed: 'removed',
   keepTheirs: (name: string | null) => (name ? `Keep the version of ${name}` : 'Keep the other version'),
   putMine: 'Put mine on top',
-  showOnSheet: 'Show on the sheet',
   allSettled: 'Everything is settled.',
   elsewhere:
     'This net is open in another tab of this browser, and only one tab can write. This tab follows what the other one does.',

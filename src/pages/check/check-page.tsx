@@ -77,6 +77,7 @@ function Check({ revision }: { revision: RevisionDto }) {
             <NotesList
               netId={payload.netId}
               notes={notes.notes}
+              error={notes.error}
               targetOf={notes.targetOf}
               canWrite={revision.can.includes('note.write')}
               chosenId={notes.chosenId}

@@ -149,6 +149,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
               <NotesList
                 netId={netId}
                 notes={notes.notes}
+                error={notes.error}
                 targetOf={notes.targetOf}
                 canWrite={detail.can.includes('note.write')}
                 chosenId={notes.chosenId}

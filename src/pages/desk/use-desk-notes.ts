@@ -13,7 +13,8 @@ const NONE: readonly NoteDto[] = [];
 
 /** The notes of the net as the list and the sheet show them. A balloon follows the point it is anchored to. */
 export function useDeskNotes(netId: string, store: DeskStore) {
-  const notes = useQuery(notesQuery(netId)).data ?? NONE;
+  const { data, error } = useQuery(notesQuery(netId));
+  const notes = data ?? NONE;
   const [chosenId, setChosenId] = useState<string | null>(null);
   const [writingAt, setWritingAt] = useState<NoteAnchor | null>(null);
   const document = useStore(store, (state) => state.document);
@@ -24,6 +25,8 @@ export function useDeskNotes(netId: string, store: DeskStore) {
   );
   return {
     notes,
+    // What was loaded before stays good enough to show while a later question fails.
+    error: data ? null : error,
     balloons,
     chosenId,
     writingAt,

@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'react';
+import { ProblemNote } from '#client/components/problem-note.tsx';
 import { notesText as text } from '#client/text/notes.ts';
 import type { NoteAnchor, NoteDto } from '#shared/contract/notes.ts';
 import { useWriteNote } from '../api/note-mutations.ts';
@@ -8,6 +9,8 @@ import { NoteWriter } from './note-writer.tsx';
 interface NotesListProps {
   netId: string;
   notes: readonly NoteDto[];
+  /** Why the notes could not be loaded; null when they could. */
+  error: unknown;
   /** What an anchor is about, such as "at P3"; the page knows the document. */
   targetOf: (anchor: NoteAnchor) => string;
   canWrite: boolean;
@@ -29,7 +32,8 @@ export function NotesList(props: NotesListProps) {
   return (
     <section aria-label={text.title} className="min-h-0 flex-1 overflow-y-auto pt-1.5">
       <NotesHead notes={notes} />
-      {notes.length === 0 && !props.writingAt ? (
+      <ProblemNote error={props.error} />
+      {notes.length === 0 && !props.error && !props.writingAt ? (
         <p className="m-0 px-3 py-1 text-ink-2">{canWrite ? text.empty : text.emptyReader}</p>
       ) : null}
       <ol className="m-0 list-none p-0">
