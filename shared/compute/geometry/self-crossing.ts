@@ -5,8 +5,8 @@ import { orientation, type Pair } from '#shared/compute/geometry/predicates.ts';
 export type SelfCrossing = { readonly s: number; readonly t: number; readonly at: Pair };
 
 /**
- * A place at which a polyline crosses itself and does not merely touch itself or run back along itself; null when there
- * is none. A loop of no more than `slack` mean width is the tremor of the hand, or a thin wall outlined down one side
+ * A place at which a polyline crosses itself and does not merely touch itself or run back along itself, a crossing at a
+ * vertex of both passages being taken for a touch; null when there is none. A loop of no more than `slack` mean width is the tremor of the hand, or a thin wall outlined down one side
  * and up the other, and passes; of such loops there may be as many as the line has segments. `isWanted` may pass over
  * others. One frame; crossings are decided exactly. Runs of segments whose boxes are apart are never compared, so that
  * an ordinary line costs no more than its length.
@@ -20,7 +20,7 @@ export function selfCrossingOf(
   const moments = momentsOf(line);
   let narrow = 0;
   for (const [i, j] of meetingRuns(line, segments)) {
-    const crossing = properCrossing(line, i, j);
+    const crossing = crossingOf(line, i, j);
     if (crossing === null || !isWanted(crossing)) continue;
     if (meanWidth(line, moments, crossing, i, j) > slack) return crossing;
     narrow += 1;
@@ -45,15 +45,17 @@ function* meetingRuns({ runs }: Polyline, segments: number): Generator<readonly 
   }
 }
 
-/** Where two segments cross, each passing from one side of the other to its other side; null when they do not. */
-function properCrossing(line: Polyline, i: number, j: number): SelfCrossing | null {
+/** Where the line crosses itself between two of its segments, or at the end of one of them; null when it does not. */
+function crossingOf(line: Polyline, i: number, j: number): SelfCrossing | null {
   const { xy, cum } = line;
   const [ax, ay, bx, by] = [xy[2 * i]!, xy[2 * i + 1]!, xy[2 * i + 2]!, xy[2 * i + 3]!];
   const [cx, cy, dx, dy] = [xy[2 * j]!, xy[2 * j + 1]!, xy[2 * j + 2]!, xy[2 * j + 3]!];
   if (Math.max(cx, dx) < Math.min(ax, bx) || Math.min(cx, dx) > Math.max(ax, bx)) return null;
   if (Math.max(cy, dy) < Math.min(ay, by) || Math.min(cy, dy) > Math.max(ay, by)) return null;
-  if (orientation(ax, ay, bx, by, cx, cy) * orientation(ax, ay, bx, by, dx, dy) >= 0) return null;
-  if (orientation(cx, cy, dx, dy, ax, ay) * orientation(cx, cy, dx, dy, bx, by) >= 0) return null;
+  const ends = sideOf(line, i, j) * sideOf(line, i, j + 1);
+  const others = sideOf(line, j, i) * sideOf(line, j, i + 1);
+  if (ends > 0 || others > 0) return null;
+  if (!(ends < 0 && others < 0) && !passesThrough(line, i, j)) return null;
   const cross = (bx - ax) * (dy - cy) - (by - ay) * (dx - cx);
   const t = held(((cx - ax) * (dy - cy) - (cy - ay) * (dx - cx)) / cross);
   const u = held(((cx - ax) * (by - ay) - (cy - ay) * (bx - ax)) / cross);
@@ -62,6 +64,22 @@ function properCrossing(line: Polyline, i: number, j: number): SelfCrossing | nu
     t: cum[j]! + u * (cum[j + 1]! - cum[j]!),
     at: [ax + t * (bx - ax), ay + t * (by - ay)],
   };
+}
+
+/** On which side of segment `i` the vertex `k` lies: 1, −1, or 0 on its straight line. */
+function sideOf({ xy }: Polyline, i: number, k: number): number {
+  return orientation(xy[2 * i]!, xy[2 * i + 1]!, xy[2 * i + 2]!, xy[2 * i + 3]!, xy[2 * k]!, xy[2 * k + 1]!);
+}
+
+/** True when one segment's end lies on the other segment and the line goes on from there on the far side. */
+function passesThrough(line: Polyline, i: number, j: number): boolean {
+  const last = line.cum.length - 1;
+  const onto = (k: number, own: number) =>
+    own + 2 <= last &&
+    sideOf(line, k, own + 1) === 0 &&
+    sideOf(line, k, own) * sideOf(line, k, own + 2) < 0 &&
+    sideOf(line, own, k) * sideOf(line, own, k + 1) < 0;
+  return onto(i, j) || onto(j, i);
 }
 
 /** The part 0 to 1; a half where rounding leaves no figure. */
