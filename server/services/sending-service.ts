@@ -41,8 +41,8 @@ export function createSendingService(deps: SendingDeps) {
     const place = await placeOfNet(manager, netId);
     const previous = await newestRevision(manager, netId);
     const { payload, reviewer } = await draw(place, previous, input, actor);
-    await insertRevision(payload, numberAfter(previous), changeNumber);
-    await tell(payload, place, reviewer, actor);
+    const hash = await insertRevision(payload, numberAfter(previous), changeNumber);
+    await tell(payload, hash, place, reviewer, actor);
     return revisionSummaryOf(manager, input.id);
   }
 
@@ -91,15 +91,23 @@ export function createSendingService(deps: SendingDeps) {
       message: payload.message,
       sentAt: new Date(payload.sentAt),
     });
+    return hash;
   }
 
-  async function tell(payload: RevisionPayload, place: NetPlace, reviewer: Reviewer, actor: Actor) {
+  async function tell(
+    payload: RevisionPayload,
+    hash: string,
+    place: NetPlace,
+    reviewer: Reviewer,
+    actor: Actor,
+  ) {
     const { revisionId, netId, label, message } = payload;
     const letter = sentForCheckingMail({
       ...revisionFacts(payload),
       sentBy: actor.name,
       message,
       figures: scheduleFigures(payload),
+      hash,
       url: `${config.publicUrl}/revisions/${revisionId}`,
     });
     await queueMail(deps, { ...letter, personId: reviewer.id, to: reviewer.email });

@@ -99,6 +99,7 @@ describe('sending for checking', () => {
       'For checking: Harrow Fen Dam, HF-114 rev C, Section B–B, chainage 212, revision A',
     );
     expect(mail?.text).toContain(`http://tracehead.test/revisions/${input.id}`);
+    expect(mail?.text).toContain(`Hash of the record: ${opened.summary.hash}`);
     const [p1] = opened.payload.reading.points;
     expect(mail?.text).toMatch(/Total head, m local datum LD, ± provisional/);
     const pressure = `${p1.porePressure.toFixed(1)} ± ${p1.porePressurePlusMinus.toFixed(1)}`;

@@ -28,6 +28,8 @@ export interface SentForCheckingData extends RevisionFacts {
   message: string;
   /** The schedule's main figures as frozen, already formatted. */
   figures: Figures | null;
+  /** SHA-256 of the frozen record: kept in a mailbox, it is a copy that nobody can rewrite together with the database. */
+  hash: string;
   url: string;
 }
 
@@ -38,7 +40,7 @@ export function sentForCheckingMail(data: SentForCheckingData): Letter {
       `${data.sentBy} asks you to check a flow net.`,
       ...(data.message ? [`Message: ${data.message}`] : []),
     ],
-    facts: factsOf(data),
+    facts: [...factsOf(data), ['Hash of the record', data.hash]],
     figures: data.figures,
     link: { label: 'Open the revision', url: data.url },
     closing:

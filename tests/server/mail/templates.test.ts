@@ -37,6 +37,7 @@ const letters = {
         ['P12', '101.05', '8.9'],
       ],
     },
+    hash: 'a1b2c3',
     url: LINK,
   }),
   accepted: decidedMail({ ...REVISION, decision: 'accepted', decidedBy: 'Remi Okafor', note: '', url: LINK }),
@@ -93,6 +94,7 @@ describe('what people type', () => {
       sentBy: nasty,
       message: `${nasty}\nsecond line`,
       figures: { heads: [nasty], rows: [[nasty]] },
+      hash: 'a1b2c3',
       url: LINK,
     });
     expect(html).not.toContain('<img');
