@@ -4,8 +4,8 @@ import path from 'node:path';
 import { faults } from './messages.mjs';
 
 const READY_SECONDS = 60;
-/** Longer than the server itself allows what is in flight. */
-const STOP_MS = 40_000;
+/** Longer than the server itself allows requests and then jobs in flight. */
+const STOP_MS = 60_000;
 
 /**
  * @typedef {object} RunningServer
