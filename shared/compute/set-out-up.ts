@@ -26,7 +26,7 @@ export function askUp(): SetOutFit {
     finding: makeFinding(
       'missing',
       'upUnknown',
-      'The sheet seems to lie on its side. Say which way is up on it.',
+      'By the known points the sheet does not stand upright. Check their typed values, or say which way is up on it.',
       { cell: 'scale' },
     ),
   };

@@ -1,6 +1,7 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { type SectionMap, sectionMapOf } from '#shared/compute/section-map.ts';
 import { fitByDistance } from '#shared/compute/set-out-distance.ts';
+import { setOutFindings } from '#shared/compute/set-out-findings.ts';
 import { fitByPoints } from '#shared/compute/set-out-points.ts';
 import {
   type Similarity,
@@ -9,15 +10,10 @@ import {
   similarityScale,
 } from '#shared/compute/similarity.ts';
 import { metresPerLengthUnit } from '#shared/compute/units.ts';
-import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
+import { type EntityOf, entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, SetOutReading } from '#shared/contract/reading.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 
 const METRES_PER_INCH = 0.0254;
-/** A stated drawing scale is questioned when the fit departs from it by more than this part. */
-const SCALE_TOLERANCE = 0.02;
-/** A residual is questioned beyond this part of the extent of the known points; paper shrinks by less. */
-const RESIDUAL_PART = 0.01;
 
 export type SetOut = {
   reading: SetOutReading;
@@ -68,7 +64,7 @@ export function readSetOut(document: FlowNetDocument): SetOut {
   const points = entitiesOf(document, 'knownPoint');
   const fit = setOut.method === 'points' ? fitByPoints(points, setOut) : fitByDistance(points, setOut);
   if (fit.state !== 'fitted') return withoutMap(fit.state, fit.finding);
-  return withMap(document, fit.similarity, fit.fitPoints, setOut.statedScale);
+  return withMap(document, fit.similarity, fit.fitPoints, setOut);
 }
 
 function withoutMap(state: SetOutReading['state'], finding: Finding): SetOut {
@@ -79,7 +75,7 @@ function withMap(
   document: FlowNetDocument,
   similarity: Similarity,
   fitPoints: number,
-  statedScale: number | null,
+  setOut: EntityOf<'setOut'>,
 ): SetOut {
   const unitsPerPx = similarityScale(similarity);
   const { residuals, residual } = residualsOf(document, similarity, fitPoints);
@@ -90,10 +86,7 @@ function withMap(
   if (!figures.every((figure) => figure === null || Number.isFinite(figure))) {
     return withoutMap('refused', tooLarge());
   }
-  const findings = [
-    ...scaleFindings(impliedScale, statedScale),
-    ...residualFindings(document, residual, unitsPerPx),
-  ];
+  const findings = setOutFindings(document, setOut, similarity, residual, impliedScale);
   return {
     reading: {
       state: 'fitted',
@@ -136,34 +129,4 @@ function residualsOf(document: FlowNetDocument, similarity: Similarity, fitPoint
     counted += 1;
   }
   return { residuals, residual: counted === 0 ? null : Math.sqrt(square / counted) };
-}
-
-/** One mistyped point among several shows in the residual alone: the fit spreads its error over all of them. */
-function residualFindings(document: FlowNetDocument, residual: number | null, unitsPerPx: number): Finding[] {
-  const places = entitiesOf(document, 'knownPoint').map(({ value }) => value.at);
-  const range = (axis: 0 | 1) =>
-    Math.max(...places.map((at) => at[axis])) - Math.min(...places.map((at) => at[axis]));
-  if (residual === null || residual <= RESIDUAL_PART * Math.hypot(range(0), range(1)) * unitsPerPx) return [];
-  const unit = document.unitSystem === 'SI' ? 'm' : 'ft';
-  return [
-    makeFinding(
-      'question',
-      'residualLarge',
-      `The known points disagree by ${fixedText(residual, 2)} ${unit}, more than a hundredth of the distance between them. Check the typed values, the places clicked and whether both directions have one scale.`,
-      { cell: 'residual' },
-    ),
-  ];
-}
-
-function scaleFindings(impliedScale: number | null, statedScale: number | null): Finding[] {
-  if (impliedScale === null || statedScale === null || !(statedScale > 0)) return [];
-  if (Math.abs(impliedScale / statedScale - 1) <= SCALE_TOLERANCE) return [];
-  return [
-    makeFinding(
-      'question',
-      'scaleDisagrees',
-      `The known points make the scale 1:${impliedScale.toPrecision(3)}, the drawing states 1:${statedScale}. Check the typed values, the dpi of the scan and whether the print was reduced.`,
-      { cell: 'scale' },
-    ),
-  ];
 }

@@ -207,6 +207,10 @@ describe('setting out by known points', () => {
     expect(fits.findings).toEqual([]);
     const off = readSetOut(sectionOf(points, { statedScale: 500 }, { dpi: 300, unitSystem: 'US' }));
     expect(off.findings.map((found) => found.code)).toEqual(['scaleDisagrees']);
+    expect(off.findings[0]!.text).toContain('the scale 1:480, the drawing states 1:500.');
+    const small = readSetOut(sectionOf(points, { statedScale: 2000 }, { dpi: 1000, unitSystem: 'US' }))
+      .findings[0];
+    expect(small!.text).toContain('the scale 1:1600, the drawing states 1:2000.');
   });
 
   it('gives the same places, shifted, for a chainage of 250,000 and an elevation of 3,000', () => {
@@ -260,6 +264,17 @@ describe('setting out by a distance', () => {
     expect(right.map!.toSection(sheetPx(1500, 900))).toEqual([35, 100.5]);
     const left = readSetOut(sectionOf(points, { method: 'distance', distance: 25, offsetsGrow: 'left' }));
     expect(left.map!.toSection(sheetPx(1500, 900))[0]).toBeCloseTo(-15, 9);
+  });
+
+  it('questions a second elevation that denies the level line', () => {
+    const answers = { method: 'distance' as const, distance: 40, offsetsGrow: 'right' as const };
+    const codes = (second: number | null) =>
+      readSetOut(
+        sectionOf([known(100, 900, 0, 100), { at: [1100, 900], elevation: second }], answers),
+      ).findings.map((found) => found.code);
+    expect(codes(null)).toEqual([]);
+    expect(codes(100)).toEqual([]);
+    expect(codes(103)).toEqual(['distanceDenied']);
   });
 
   it('takes the sheet for level where the line is not', () => {
