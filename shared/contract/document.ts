@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import { MAX_FIGURE, MAX_PERMEABILITY, MAX_SHEET_PX } from './limits.ts';
 import { type UnitSystem, unitSystem } from './unit-system.ts';
 
 /**
@@ -13,13 +14,16 @@ export const FLOW_NET_FORMAT = 'tracehead/flow-net';
 export const FLOW_NET_VERSION = 1;
 
 export const entityId = z.uuid();
+const sheetPx = z.number().check(z.gte(-MAX_SHEET_PX), z.lte(MAX_SHEET_PX));
 /** A place on the sheet in base-raster pixels, `[x, y]`, y down. */
-export const sheetPoint = z.tuple([z.number(), z.number()]);
+export const sheetPoint = z.tuple([sheetPx, sheetPx]);
 export type SheetPoint = z.infer<typeof sheetPoint>;
 
 export { type UnitSystem, unitSystem };
 
-const finite = z.number();
+/** An offset, a length, an elevation or a head in the document's length unit, or a count of drops. */
+const measure = z.number().check(z.gte(-MAX_FIGURE), z.lte(MAX_FIGURE));
+const positive = z.number().check(z.positive(), z.lte(MAX_FIGURE));
 const label = z.string().check(z.maxLength(120));
 
 /** A point whose place in the section is known: `fit` points set the scale, `check` points only show a residual. */
@@ -28,9 +32,9 @@ export const knownPoint = z.object({
   name: label,
   at: sheetPoint,
   /** Offset in the section in the document's length unit; null until typed. */
-  offset: z.nullable(finite),
+  offset: z.nullable(measure),
   /** Elevation above the document's datum in its length unit; null until typed. */
-  elevation: z.nullable(finite),
+  elevation: z.nullable(measure),
   use: z.enum(['fit', 'check']),
 });
 
@@ -40,7 +44,7 @@ export const setOut = z.object({
   /** `points`: two or more known points. `distance`: a length between the first two known points, one elevation and one offset. */
   method: z.enum(['points', 'distance']),
   /** For `distance`: the length between the first two known points, document length unit. */
-  distance: z.nullable(finite),
+  distance: z.nullable(measure),
   /** For `distance`: what is level. `line`: the line through the two points; `sheet`: the sheet's own horizontal. */
   level: z.enum(['line', 'sheet']),
   /** Which way offsets grow on the sheet as displayed; null = let the points decide. */
@@ -50,7 +54,7 @@ export const setOut = z.object({
   /** Which way is up on the sheet when the points leave it open: quarter turns clockwise of the sheet's own up. */
   upQuarterTurns: z.nullable(z.union([z.literal(0), z.literal(1), z.literal(2), z.literal(3)])),
   /** Denominator n of the scale 1:n stated on the drawing, to warn when the fit disagrees; null when none is stated. */
-  statedScale: z.nullable(finite),
+  statedScale: z.nullable(measure),
 });
 
 export const lineKind = z.enum([
@@ -82,8 +86,8 @@ export const tracedLine = z.object({
   /** False while the line is still being drawn: kept, shown, left out of every reading. */
   finished: z.boolean(),
   water: z.nullable(z.enum(['headwater', 'tailwater'])),
-  head: z.nullable(finite),
-  drops: z.nullable(finite),
+  head: z.nullable(measure),
+  drops: z.nullable(measure),
 });
 export type TracedLine = z.infer<typeof tracedLine>;
 
@@ -93,10 +97,10 @@ export const readingPoint = z.object({
   name: label,
   place: z.discriminatedUnion('on', [
     z.object({ on: z.literal('sheet'), at: sheetPoint }),
-    z.object({ on: z.literal('section'), offset: finite, elevation: finite }),
+    z.object({ on: z.literal('section'), offset: measure, elevation: measure }),
   ]),
   /** Order in the schedule, ascending. */
-  order: finite,
+  order: z.number(),
 });
 
 export const permeabilityUnit = z.enum(['m/s', 'cm/s', 'm/day', 'ft/s', 'ft/min', 'ft/day', 'ft/year']);
@@ -105,20 +109,20 @@ export type PermeabilityUnit = z.infer<typeof permeabilityUnit>;
 /** Water levels of the load case, elevations in the document's length unit. One for each net. */
 export const waterLevels = z.object({
   kind: z.literal('waterLevels'),
-  headwater: z.nullable(finite),
+  headwater: z.nullable(measure),
   /** null: no tailwater; the outlets are drains or faces of free outflow. */
-  tailwater: z.nullable(finite),
+  tailwater: z.nullable(measure),
   /** Unit weight of water, kN/m³ (SI) or lb/ft³ (US). */
-  gammaW: z.number().check(z.positive()),
+  gammaW: positive,
   source: z.string().check(z.maxLength(500)),
 });
 
 /** Permeability with the factor (×/÷) within which it is known. One for each net. */
 export const permeability = z.object({
   kind: z.literal('permeability'),
-  k: z.nullable(z.number().check(z.positive())),
+  k: z.nullable(z.number().check(z.positive(), z.lte(MAX_PERMEABILITY))),
   unit: permeabilityUnit,
-  factor: z.nullable(z.number().check(z.minimum(1))),
+  factor: z.nullable(z.number().check(z.minimum(1), z.lte(MAX_FIGURE))),
   source: z.string().check(z.maxLength(500)),
 });
 
@@ -126,15 +130,15 @@ export const permeability = z.object({
 export const netCount = z.object({
   kind: z.literal('netCount'),
   /** Stated number of drops Nd from headwater to outlet; null until stated. */
-  drops: z.nullable(z.number().check(z.positive())),
+  drops: z.nullable(positive),
   /** Stated number of channels Nf; null = counted from the traced flow lines. */
-  channels: z.nullable(z.number().check(z.positive())),
+  channels: z.nullable(positive),
   /** Width across the flow over length along it of the cells, B/L; 1 for squares. */
-  cellRatio: z.number().check(z.positive()),
+  cellRatio: positive,
   /** Tracing accuracy on the sheet in pixels, for the provisional ±. */
-  tracingAccuracyPx: z.number().check(z.nonnegative()),
+  tracingAccuracyPx: z.number().check(z.nonnegative(), z.lte(MAX_FIGURE)),
   /** Accuracy of the known points on the drawing in pixels, for the provisional ±. */
-  knownPointAccuracyPx: z.number().check(z.nonnegative()),
+  knownPointAccuracyPx: z.number().check(z.nonnegative(), z.lte(MAX_FIGURE)),
 });
 
 export const documentEntity = z.discriminatedUnion('kind', [

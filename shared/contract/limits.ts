@@ -2,6 +2,12 @@
 
 /** Bytes of one uploaded file. A 600-dpi colour sheet in PDF stays below it. */
 export const MAX_UPLOAD_BYTES = 250 * 1024 * 1024;
+/** Base-raster pixels a place may lie from the sheet's corner; the longest page at 600 dpi has some 100,000. */
+export const MAX_SHEET_PX = 1e6;
+/** Greatest offset, elevation, head or count of a document, in any unit: no section is ten thousand kilometres long. */
+export const MAX_FIGURE = 1e7;
+/** Greatest permeability, in any unit; the loosest rockfill has some 1e9 ft/year. */
+export const MAX_PERMEABILITY = 1e12;
 /** Operations in one batch of commands; a longer queue is sent in several. */
 export const MAX_OPS_PER_BATCH = 500;
 /** Characters of one note or answer. */

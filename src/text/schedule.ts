@@ -53,4 +53,5 @@ export const typedNumberText = {
   notANumber: 'Not a number. Type it as 118.25 or 118,25.',
   needed: 'A figure is needed here.',
   mustBePositive: 'It has to be greater than zero.',
+  tooLarge: 'This figure is too large. Check the decimal point and the unit.',
 } as const;

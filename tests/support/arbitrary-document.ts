@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import type { DocumentEntity, FlowNetDocument, LineKind } from '#shared/contract/document.ts';
+import { MAX_FIGURE, MAX_PERMEABILITY, MAX_SHEET_PX } from '#shared/contract/limits.ts';
 import { entityIdOf, exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 
@@ -15,17 +16,22 @@ const KINDS: LineKind[] = [
   'drain',
 ];
 
-/** Any finite number that the schema admits, ordinary ones more often than monsters. */
-const anyNumber = fc.oneof(
-  { weight: 6, arbitrary: fc.integer({ min: -5, max: 20 }).map((value) => value * 50) },
-  { weight: 3, arbitrary: fc.double({ min: -1e4, max: 1e4, noNaN: true }) },
-  { weight: 1, arbitrary: fc.double({ noNaN: true, noDefaultInfinity: true }) },
-);
-const positive = fc.oneof(
-  fc.double({ min: 0.01, max: 100, noNaN: true }),
-  fc.double({ min: Number.MIN_VALUE, max: Number.MAX_VALUE, noNaN: true, noDefaultInfinity: true }),
-);
-const place = fc.tuple(anyNumber, anyNumber);
+/** Numbers within ±`most`, ordinary ones more often than monsters. */
+const numbersTo = (most: number) =>
+  fc.oneof(
+    { weight: 6, arbitrary: fc.integer({ min: -5, max: 20 }).map((value) => value * 50) },
+    { weight: 3, arbitrary: fc.double({ min: -1e4, max: 1e4, noNaN: true }) },
+    { weight: 1, arbitrary: fc.double({ min: -most, max: most, noNaN: true }) },
+  );
+const positiveTo = (most: number) =>
+  fc.oneof(
+    fc.double({ min: 0.01, max: 100, noNaN: true }),
+    fc.double({ min: Number.MIN_VALUE, max: most, noNaN: true }),
+  );
+/** Any offset, elevation or head that the schema admits, any other figure, any place on the sheet. */
+const anyNumber = numbersTo(MAX_FIGURE);
+const positive = positiveTo(MAX_FIGURE);
+const place = fc.tuple(numbersTo(MAX_SHEET_PX), numbersTo(MAX_SHEET_PX));
 const maybe = <T>(arbitrary: fc.Arbitrary<T>) => fc.option(arbitrary, { nil: null });
 
 const knownPoint = fc.record({
@@ -55,7 +61,7 @@ const readingPoint = fc.record({
     fc.record({ on: fc.constant('sheet' as const), at: place }),
     fc.record({ on: fc.constant('section' as const), offset: anyNumber, elevation: anyNumber }),
   ),
-  order: anyNumber,
+  order: fc.double({ noNaN: true, noDefaultInfinity: true }),
 });
 
 const singles: fc.Arbitrary<DocumentEntity>[] = [
@@ -78,7 +84,7 @@ const singles: fc.Arbitrary<DocumentEntity>[] = [
   }),
   fc.record({
     kind: fc.constant('permeability' as const),
-    k: maybe(positive),
+    k: maybe(positiveTo(MAX_PERMEABILITY)),
     unit: fc.constantFrom('m/s' as const, 'ft/year' as const),
     factor: maybe(fc.double({ min: 1, max: 1e6, noNaN: true })),
     source: fc.constant(''),

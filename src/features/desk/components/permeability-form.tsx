@@ -1,5 +1,6 @@
 import { formText, permeabilityText as text } from '#client/text/desk-forms.ts';
 import { type EntityOf, singleOf } from '#shared/contract/document.ts';
+import { MAX_PERMEABILITY } from '#shared/contract/limits.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure, Words } from './form-fields.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
@@ -22,6 +23,7 @@ export function PermeabilityForm({ document, reading, disabled, run, onClose }: 
           value={k}
           optional
           positive
+          most={MAX_PERMEABILITY}
           disabled={disabled}
           onCommit={(next) => change({ k: next })}
         />

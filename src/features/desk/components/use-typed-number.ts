@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { typedNumberText as text } from '#client/text/schedule.ts';
+import { MAX_FIGURE } from '#shared/contract/limits.ts';
 import { MINUS } from '#shared/text/number-text.ts';
 
 interface TypedNumber {
@@ -11,6 +12,8 @@ interface TypedNumber {
   positive?: boolean;
   /** Least value that can be taken, with the sentence that says so. */
   atLeast?: { least: number; fault: string };
+  /** Greatest size of a value that can be taken. */
+  most?: number;
   /** How the value is shown while nobody types; the figure as entered by default. */
   shown?: string;
 }
@@ -28,6 +31,7 @@ export function useTypedNumber({
   optional = false,
   positive = false,
   atLeast,
+  most = MAX_FIGURE,
   shown,
 }: TypedNumber) {
   const [typed, setTyped] = useState<string | null>(null);
@@ -48,6 +52,7 @@ export function useTypedNumber({
     if (entered.trim() === '') return { parsed: null, fault: optional ? null : text.needed };
     const parsed = parseTypedNumber(entered);
     if (parsed === null) return { parsed, fault: text.notANumber };
+    if (Math.abs(parsed) > most) return { parsed, fault: text.tooLarge };
     if (positive && parsed <= 0) return { parsed, fault: text.mustBePositive };
     return { parsed, fault: atLeast && parsed < atLeast.least ? atLeast.fault : null };
   }
