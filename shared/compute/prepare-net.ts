@@ -8,6 +8,7 @@ import {
 import { headsOf, type NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind } from '#shared/compute/net/net-lines.ts';
 import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
+import { questionPhreaticHeads } from '#shared/compute/net/phreatic-heads.ts';
 import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, placePoint, type ReadingGround } from '#shared/compute/net/read-point.ts';
@@ -65,6 +66,7 @@ export function prepareNet(
     ...model.findings,
     ...heads.findings,
     ...waterlineFindings(model, heads, map, inputs),
+    ...questionPhreaticHeads(model, heads, map, accuracy),
     ...questionLevels(water, model.potentials),
     ...questionUnitWeight(water.gammaW, document.unitSystem),
     ...questionPermeability(permeability),

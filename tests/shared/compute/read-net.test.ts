@@ -336,6 +336,14 @@ describe('implausible inputs are questioned but not refused', () => {
     expect(codesOf(readNet(parabolaNet()))).not.toContain('unitWeightImplausible');
   });
 
+  it('a count that the phreatic line denies, as after a line left out and the rest counted anew', () => {
+    const short = withLines(parabolaNet(), 'equipotential', (value, i) => (i === 4 ? null : value));
+    const reading = readNet(changed(short, 'netCount', (value) => ({ ...value, drops: 9 })));
+    expect(reading.state).toBe('read');
+    expect(codesOf(reading)).toContain('phreaticHeadDiffers');
+    expect(codesOf(readNet(parabolaNet()))).not.toContain('phreaticHeadDiffers');
+  });
+
   it('channels stated otherwise than traced', () => {
     const reading = readNet(changed(parabolaNet(), 'netCount', (value) => ({ ...value, channels: 5 })));
     expect(codesOf(reading)).toContain('channelsDiffer');
