@@ -34,9 +34,9 @@ export function ToolPalette({ store, layout = 'column', className }: ToolPalette
     >
       {GROUPS.map((group) => (
         <div key={group.title} className={column ? 'mb-3.5' : 'flex items-stretch border-r border-rule'}>
-          <h3 className={column ? 'mx-4 mt-0 mb-1 text-sm font-semibold text-ink-2' : 'sr-only'}>
+          <h2 className={column ? 'mx-4 mt-0 mb-1 text-sm font-semibold text-ink-2' : 'sr-only'}>
             {group.title}
-          </h3>
+          </h2>
           {group.tools.map((tool) => (
             <PaletteButton key={tool} store={store} tool={tool} column={column} />
           ))}
