@@ -1,13 +1,12 @@
 import { useSuspenseInfiniteQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
-import { Button } from '#client/components/button.tsx';
+import { MoreButton } from '#client/components/more-button.tsx';
 import { Empty, PanelItem, PanelList } from '#client/components/panel.tsx';
 import { Cell, HeadCell, Table } from '#client/components/table.tsx';
 import { formatAgo, formatMoment } from '#client/lib/dates.ts';
 import { shortName } from '#client/lib/initials.ts';
 import { paths } from '#client/lib/paths.ts';
 import { activityText as text } from '#client/text/activity.ts';
-import { commonText } from '#client/text/common.ts';
 import type { EventDto } from '#shared/contract/dams.ts';
 import { damActivityQuery } from '../api/activity-queries.ts';
 
@@ -48,10 +47,8 @@ export function RecentActivity({ damId }: { damId: string }) {
 
 /** All of it as a table, a page at a time. */
 export function ActivityTable({ damId }: { damId: string }) {
-  const { data, hasNextPage, fetchNextPage, isFetchingNextPage } = useSuspenseInfiniteQuery(
-    damActivityQuery(damId),
-  );
-  const events = data.pages.flatMap((page) => page.items);
+  const query = useSuspenseInfiniteQuery(damActivityQuery(damId));
+  const events = query.data.pages.flatMap((page) => page.items);
   if (events.length === 0) return <Empty>{text.none}</Empty>;
   return (
     <>
@@ -75,17 +72,7 @@ export function ActivityTable({ damId }: { damId: string }) {
           ))}
         </tbody>
       </Table>
-      {hasNextPage ? (
-        <div className="p-3.5">
-          <Button
-            busy={isFetchingNextPage}
-            busyLabel={commonText.loading}
-            onClick={() => void fetchNextPage()}
-          >
-            {text.more}
-          </Button>
-        </div>
-      ) : null}
+      <MoreButton label={text.more} query={query} />
     </>
   );
 }

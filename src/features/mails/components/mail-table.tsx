@@ -1,11 +1,10 @@
 import { useSuspenseInfiniteQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
-import { Button } from '#client/components/button.tsx';
+import { MoreButton } from '#client/components/more-button.tsx';
 import { Empty } from '#client/components/panel.tsx';
 import { Cell, HeadCell, Table } from '#client/components/table.tsx';
 import { formatMoment } from '#client/lib/dates.ts';
 import { paths } from '#client/lib/paths.ts';
-import { commonText } from '#client/text/common.ts';
 import { mailsText as text } from '#client/text/mails.ts';
 import type { MailDto } from '#shared/contract/mails.ts';
 import { mailListQuery } from '../api/mail-queries.ts';
@@ -17,12 +16,12 @@ const STATE_LOOKS: Record<MailDto['state'], string> = {
 };
 
 export function MailTable() {
-  const { data, hasNextPage, fetchNextPage, isFetchingNextPage } = useSuspenseInfiniteQuery(mailListQuery());
-  const mails = data.pages.flatMap((page) => page.items);
+  const query = useSuspenseInfiniteQuery(mailListQuery());
+  const mails = query.data.pages.flatMap((page) => page.items);
   if (mails.length === 0) return <Empty>{text.none}</Empty>;
   return (
     <>
-      <Table caption={text.caption}>
+      <Table caption={text.caption} stacked>
         <thead>
           <tr>
             <HeadCell>{text.subject}</HeadCell>
@@ -34,7 +33,7 @@ export function MailTable() {
         <tbody>
           {mails.map((mail) => (
             <tr key={mail.id}>
-              <Cell className="min-w-[240px]">
+              <Cell className="sm:min-w-[240px]">
                 <Link to={paths.mail(mail.id)} className="touch inline-flex items-center">
                   {mail.subject}
                 </Link>
@@ -49,17 +48,7 @@ export function MailTable() {
           ))}
         </tbody>
       </Table>
-      {hasNextPage ? (
-        <div className="p-3.5">
-          <Button
-            busy={isFetchingNextPage}
-            busyLabel={commonText.loading}
-            onClick={() => void fetchNextPage()}
-          >
-            {text.more}
-          </Button>
-        </div>
-      ) : null}
+      <MoreButton label={text.more} query={query} />
     </>
   );
 }
