@@ -1,6 +1,8 @@
 import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
 import {
+  extentOf,
+  questionHeadwater,
   questionLevels,
   questionPermeability,
   questionUnitWeight,
@@ -68,6 +70,7 @@ export function prepareNet(
     ...waterlineFindings(model, heads, map, inputs),
     ...questionPhreaticHeads(model, heads, map, accuracy),
     ...questionLevels(water, model.potentials),
+    ...questionHeadwater(water.headwater, extentOf(model.lines, map), document.unitSystem),
     ...questionUnitWeight(water.gammaW, document.unitSystem),
     ...questionPermeability(permeability),
     ...channels.findings,

@@ -14,6 +14,9 @@ const GREATEST_K = 1;
 /** A point farther than this off the traced section, in metres, is more often a slip of the sign or of the figure. */
 const FAR_METRES = 100;
 const FAR_FEET = 330;
+/** No dam holds its water this high above its own section. */
+const HIGH_METRES = 350;
+const HIGH_FEET = 1150;
 
 /** Questions about the water levels: each is plausible by itself but not beside the others. */
 export function questionLevels(water: EntityOf<'waterLevels'>, potentials: readonly Potential[]): Finding[] {
@@ -106,6 +109,25 @@ export function extentOf(lines: readonly NetLine[], map: SectionMap): SectionExt
   if (corners.length === 0) return null;
   const range = (values: number[]): [number, number] => [Math.min(...values), Math.max(...values)];
   return { offsets: range(corners.map((at) => at[0])), elevations: range(corners.map((at) => at[1])) };
+}
+
+/** Questions a headwater that stands above everything traced higher than any dam, as one with a digit too many does. */
+export function questionHeadwater(
+  headwater: number | null,
+  extent: SectionExtent | null,
+  system: UnitSystem,
+): Finding[] {
+  if (headwater === null || extent === null) return [];
+  const [limit, unit] = system === 'SI' ? [HIGH_METRES, 'm'] : [HIGH_FEET, 'ft'];
+  if (headwater - extent.elevations[1] <= limit) return [];
+  return [
+    makeFinding(
+      'question',
+      'headwaterFarAbove',
+      `The headwater stands more than ${limit} ${unit} above everything that is traced. Check the level and the known points.`,
+      { cell: 'headwater' },
+    ),
+  ];
 }
 
 /**

@@ -135,7 +135,6 @@ function freeOrHeld(
     label: labelOf(line),
   };
   const held = line.kind === 'drain' ? line.value.head : null;
-  if (held !== null) return { ...base, level: held, outHead: held };
   const { low, high, mean } = elevationsAlong(line.shape, map);
   if (![low, high, mean].every(Number.isFinite)) {
     return problem(
@@ -144,6 +143,16 @@ function freeOrHeld(
       'outletNotFinite',
       'The outlet has no usable elevation. Check the known points.',
     );
+  }
+  if (held !== null) {
+    return held < low - 6 * accuracyPx * map.unitsPerPx
+      ? problem(
+          line,
+          'wrong',
+          'drainHeadBelowDrain',
+          `The head typed for ${labelOf(line)} lies below the drain itself. Type the elevation to which its water rises, not a depth, or say that the drain is empty.`,
+        )
+      : { ...base, level: held, outHead: held };
   }
   const allowed = Math.max(
     LEVEL_PART * Math.abs((headwater ?? high) - mean),

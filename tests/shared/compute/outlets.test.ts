@@ -59,6 +59,16 @@ describe('a drain', () => {
     expect(held.state).toBe('read');
   });
 
+  it('with a head below itself, as a depth typed for an elevation is, has no figure', () => {
+    const net = exactNetDocument(parabola.net, {
+      pxPerUnit: parabola.pxPerUnit,
+      readings: [{ at: parabola.net.placeAt(1.5, 1.2), clicked: true }],
+    });
+    const reading = readNet(withLines(net, 'drain', (value) => ({ ...value, head: 3 })));
+    expect(reading.findings.map((found) => found.code)).toContain('drainHeadBelowDrain');
+    expect(reading.points[0]!.porePressure).toBeNull();
+  });
+
   it('above the headwater is questioned', () => {
     const net = exactNetDocument(parabola.net, { pxPerUnit: parabola.pxPerUnit });
     const codes = readNet(withLines(net, 'drain', (value) => ({ ...value, head: 130 }))).findings.map(

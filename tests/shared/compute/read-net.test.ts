@@ -336,6 +336,13 @@ describe('implausible inputs are questioned but not refused', () => {
     expect(codesOf(readNet(parabolaNet()))).not.toContain('unitWeightImplausible');
   });
 
+  it('a headwater with a digit too many', () => {
+    const bed = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit });
+    const reading = readNet(changed(bed, 'waterLevels', (value) => ({ ...value, headwater: 1060 })));
+    expect(codesOf(reading)).toContain('headwaterFarAbove');
+    expect(codesOf(readNet(bed))).not.toContain('headwaterFarAbove');
+  });
+
   it('a count that the phreatic line denies, as after a line left out and the rest counted anew', () => {
     const short = withLines(parabolaNet(), 'equipotential', (value, i) => (i === 4 ? null : value));
     const reading = readNet(changed(short, 'netCount', (value) => ({ ...value, drops: 9 })));
