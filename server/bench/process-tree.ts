@@ -2,8 +2,11 @@ import { readdirSync, readFileSync } from 'node:fs';
 
 const POLL_MS = 50;
 
+/** Whether the root itself counts, or only what it started. */
+type Counted = 'whole' | 'children';
+
 /** Resident bytes of a process and all that it started. Linux only; 0 elsewhere. */
-function residentBytesOfTree(root: number): number {
+function residentBytesOfTree(root: number, counted: Counted): number {
   const processes = readProcesses();
   const family = new Set([root]);
   // A child's number may be lower than its parent's, so one pass in the order of numbers is not enough.
@@ -11,6 +14,7 @@ function residentBytesOfTree(root: number): number {
     before = family.size;
     for (const each of processes) if (family.has(each.parent)) family.add(each.pid);
   }
+  if (counted === 'children') family.delete(root);
   return processes.reduce((sum, each) => sum + (family.has(each.pid) ? each.bytes : 0), 0);
 }
 
@@ -32,10 +36,11 @@ function readProcesses(): Array<{ pid: number; parent: number; bytes: number }> 
 export async function peakOfTree<T>(
   root: number,
   work: () => Promise<T>,
+  counted: Counted = 'whole',
 ): Promise<{ result: T; bytes: number }> {
-  let bytes = residentBytesOfTree(root);
+  let bytes = residentBytesOfTree(root, counted);
   const timer = setInterval(() => {
-    bytes = Math.max(bytes, residentBytesOfTree(root));
+    bytes = Math.max(bytes, residentBytesOfTree(root, counted));
   }, POLL_MS);
   try {
     const result = await work();

@@ -41,10 +41,9 @@ async function dzsave(file: Buffer, name: string): Promise<Sample> {
   const args = ['dzsave', input, path.join(folder, 'out'), '--tile-size', '512', '--overlap', '0'];
   try {
     return await timed(async () => {
-      const { result, bytes } = await peakOfTree(process.pid, () => runCommand('vips', args));
+      const { result, bytes } = await peakOfTree(process.pid, () => runCommand('vips', args), 'children');
       if (result.code !== 0) throw new Error(`vips dzsave: ${result.output}`);
-      // This process is the root of the tree that was watched, and no part of what is measured.
-      return { bytes: Math.max(0, bytes - process.memoryUsage.rss()) };
+      return { bytes };
     });
   } finally {
     rmSync(folder, { recursive: true, force: true });
