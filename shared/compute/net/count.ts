@@ -52,6 +52,9 @@ export function countDrops(
   const typedHeadsFit = marks.every((mark) => mark.source !== 'typedHead' || isNearWhole(mark.drops ?? 0));
   const counted = fillBetween(sequence, marks, stated);
   if ('findings' in counted) return { ...nothing, findings: counted.findings };
+  if (!typedHeadsFit && !stepsFit(stated, sequence.length, true)) {
+    return { ...nothing, findings: [doesNotFit(sequence, -1, sequence.length, sequence.length, stated)] };
+  }
   const lines = sequence.map((line, i): CountedLine => {
     const drops = counted.drops[i]!;
     const mark = marks[i]!;

@@ -36,7 +36,8 @@ export function quantitiesOf(
       drops,
       tracedDrops: count?.tracedDrops ?? null,
       channels: nf,
-      channelsComplete: channels?.complete ?? false,
+      // A count that is stated beside no flow line at all is the engineer's, of the whole flow.
+      channelsComplete: channels?.counted == null ? nf !== null : channels.complete,
       headLost,
       headPerDrop: equal ? finiteOrNull(count.headPerDrop ?? Number.NaN) : null,
       unequalIntervals: count?.unequal ?? false,

@@ -194,6 +194,15 @@ describe('typed values', () => {
     expect(reading.lines.map((line) => line.head)).toContain(107.3);
   });
 
+  it('unequal as they are, still need as many lines as the count says', () => {
+    const bed = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit });
+    const typed = withLines(bed, 'equipotential', (value, i) => ({ ...value, head: 105.9 - 0.47 * i }));
+    const stating = (drops: number) => readNet(changed(typed, 'netCount', (value) => ({ ...value, drops })));
+    expect(stating(12).state).toBe('read');
+    expect(codesOf(stating(20))).toContain('countDisagrees');
+    expect(stating(20).state).toBe('unfinished');
+  });
+
   it('allow a part drop at the outlet', () => {
     const reading = readNet(changed(parabolaNet(), 'netCount', (value) => ({ ...value, drops: 9.5 })));
     expect(reading.state).toBe('read');
@@ -349,6 +358,13 @@ describe('implausible inputs are questioned but not refused', () => {
     expect(reading.state).toBe('read');
     expect(codesOf(reading)).toContain('phreaticHeadDiffers');
     expect(codesOf(readNet(parabolaNet()))).not.toContain('phreaticHeadDiffers');
+  });
+
+  it('channels stated beside no flow line are of the whole flow, not traced channels only', () => {
+    const bare = withLines(parabolaNet(), 'flowLine', () => null);
+    const { quantities } = readNet(changed(bare, 'netCount', (value) => ({ ...value, channels: 3 })));
+    expect(quantities).toMatchObject({ channels: 3, channelsComplete: true });
+    expect(readNet(bare).quantities).toMatchObject({ channels: null, channelsComplete: false });
   });
 
   it('channels stated otherwise than traced', () => {
