@@ -11,16 +11,15 @@ import { netDetailDto, netInput, netPatch } from '#shared/contract/nets.ts';
 
 const netParams = z.object({ netId: id });
 
-/** Does `work` in a transaction and answers with the net as lists show it afterwards. */
-const changedNet = (
+/** Does `work` in a transaction and answers with the net as lists show it afterwards, which may have to be read first. */
+async function changedNet(
   deps: AppDeps,
   netId: string,
   work: (service: ReturnType<typeof createNetService>) => Promise<void>,
-) =>
-  inTransaction(deps, async (tx) => {
-    await work(createNetService(tx));
-    return netSummaryOf(tx.manager, netId);
-  });
+) {
+  await inTransaction(deps, (tx) => work(createNetService(tx)));
+  return netSummaryOf(deps.db.manager, netId);
+}
 
 export const netRoutes: RouteRecord[] = [
   defineRoute({

@@ -1,11 +1,16 @@
 import type { EntityManager } from 'typeorm';
 import { notFound } from '#server/errors/app-error.ts';
 import type { NetSummary } from '#shared/contract/drawings.ts';
+import type { UnitSystem } from '#shared/contract/unit-system.ts';
+import { canBeRead } from './schedule-queries.ts';
 
 interface SummaryRow {
   id: string;
   section_id: string;
   name: string;
+  change_number: string;
+  unit_system: UnitSystem;
+  datum: string;
   archived_at: Date | null;
   drops: number | null;
   open_notes: number;
@@ -18,23 +23,27 @@ interface SummaryRow {
 
 /** The newest revision says where a net stands; everything before it is history. */
 const SUMMARIES = `
-  SELECT n.id, n.section_id, n.name, n.archived_at,
+  SELECT n.id, n.section_id, n.name, n.archived_at, n.change_number, n.unit_system, m.datum,
     (SELECT (e.value->>'drops')::float8 FROM document_entity e
       WHERE e.owner_id = n.id AND e.kind = 'netCount' AND NOT e.removed) AS drops,
     (SELECT count(*)::int FROM note o WHERE o.net_id = n.id AND o.state <> 'closed') AS open_notes,
     r.label, r.reviewer_id, p.name AS reviewer_name, n.change_number > r.change_number AS changed_since,
     (SELECT d.decision FROM decision d WHERE d.revision_id = r.id ORDER BY d.decided_at LIMIT 1) AS decision
   FROM net n
+  JOIN section c ON c.id = n.section_id
+  JOIN sheet s ON s.id = c.sheet_id
+  JOIN drawing w ON w.id = s.drawing_id
+  JOIN dam m ON m.id = w.dam_id
   LEFT JOIN LATERAL (SELECT v.id, v.label, v.reviewer_id, v.change_number FROM revision v
     WHERE v.net_id = n.id ORDER BY v.number DESC LIMIT 1) r ON true
   LEFT JOIN person p ON p.id = r.reviewer_id`;
 
-function toSummary(row: SummaryRow): NetSummary {
+async function toSummary(manager: EntityManager, row: SummaryRow): Promise<NetSummary> {
   const { reviewer_id: id, reviewer_name: name } = row;
   return {
     id: row.id,
     name: row.name,
-    drops: row.drops,
+    drops: await countOf(manager, row),
     openNotes: row.open_notes,
     state: row.label === null ? 'draft' : (row.decision ?? 'sent'),
     revisionLabel: row.label,
@@ -42,6 +51,14 @@ function toSummary(row: SummaryRow): NetSummary {
     reviewer: id && name !== null ? { id, name } : null,
     archivedAt: row.archived_at?.toISOString() ?? null,
   };
+}
+
+/** The drops stated, once the lines bear them out; until then the net is not traced, whatever was counted. */
+async function countOf(manager: EntityManager, row: SummaryRow): Promise<number | null> {
+  const { id, name, datum, change_number: changeNumber, unit_system: unitSystem } = row;
+  if (row.drops === null) return null;
+  const stands = await canBeRead(manager, { id, changeNumber, name, unitSystem, datum });
+  return stands ? row.drops : null;
 }
 
 /** The nets of each section, in order of making. */
@@ -54,7 +71,10 @@ export async function netSummariesBySection(
     [sectionIds],
   );
   const bySection = new Map<string, NetSummary[]>(sectionIds.map((id) => [id, []]));
-  for (const row of rows) bySection.get(row.section_id)?.push(toSummary(row));
+  const summaries = await Promise.all(rows.map((row) => toSummary(manager, row)));
+  summaries.forEach((summary, i) => {
+    bySection.get(rows[i]!.section_id)?.push(summary);
+  });
   return bySection;
 }
 
@@ -63,5 +83,5 @@ export async function netSummaryOf(manager: EntityManager, netId: string): Promi
   const rows: SummaryRow[] = await manager.query(`${SUMMARIES} WHERE n.id = $1`, [netId]);
   const row = rows[0];
   if (!row) throw notFound();
-  return toSummary(row);
+  return toSummary(manager, row);
 }

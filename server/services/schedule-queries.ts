@@ -1,6 +1,6 @@
 import type { EntityManager } from 'typeorm';
 import { AppError } from '#server/errors/app-error.ts';
-import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { FlowNetDocument, UnitSystem } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
@@ -9,7 +9,13 @@ import { type NetPlace, placeOfNet } from './net-place.ts';
 import { createReadingCache } from './reading-cache.ts';
 import { readInThread } from './reading-threads.ts';
 
-const cache = createReadingCache();
+/** A reading of a big net takes some 100 kB. */
+const READINGS_KEPT = 64;
+/** Lists ask of every net of a dam, and need no more than a word of each. */
+const STATES_KEPT = 10_000;
+
+const readings = createReadingCache<NetReading>(READINGS_KEPT);
+const states = createReadingCache<NetReading['state']>(STATES_KEPT);
 
 /** A file to download. */
 export interface Download {
@@ -27,10 +33,33 @@ export async function scheduleOf(manager: EntityManager, netId: string): Promise
  * @throws AppError net-unfinished when the net is such a tangle that it cannot be read in time
  */
 export function readingOf(manager: EntityManager, place: NetPlace): Promise<NetReading> {
-  const { net, dam } = place;
-  // Whatever the reading depends on besides the entities is in the key as well.
-  const key = JSON.stringify([net.id, net.changeNumber, net.name, net.unitSystem, dam.datum]);
-  return cache.get(key, async () => readInThread(await readDocument(manager, place)));
+  return readings.get(keyOf({ ...place.net, datum: place.dam.datum }), async () =>
+    readInThread(await readDocument(manager, place)),
+  );
+}
+
+/** What of a net its reading depends on besides the entities, which the change number stands for. */
+interface ReadState {
+  id: string;
+  changeNumber: string;
+  name: string;
+  unitSystem: UnitSystem;
+  datum: string;
+}
+
+const keyOf = ({ id, changeNumber, name, unitSystem, datum }: ReadState) =>
+  JSON.stringify([id, changeNumber, name, unitSystem, datum]);
+
+/**
+ * Whether the net as it stands can be read; a net that takes too long to read cannot. Costs nothing for a net that was
+ * asked about before and has not changed since.
+ */
+export async function canBeRead(manager: EntityManager, net: ReadState): Promise<boolean> {
+  const state = await states.get(keyOf(net), async () => {
+    const reading = await readingIfAny(manager, await placeOfNet(manager, net.id));
+    return reading?.state ?? 'unfinished';
+  });
+  return state === 'read';
 }
 
 /** Without it some spreadsheets read UTF-8 as Latin letters, and "±" comes out as two signs. */

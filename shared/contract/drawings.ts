@@ -49,6 +49,7 @@ export type RenderJobDto = z.infer<typeof renderJobDto>;
 export const netSummary = z.object({
   id,
   name: z.string(),
+  /** Drops of a net that can be read; null while it is not finished, even if a count was stated. */
   drops: z.nullable(z.number()),
   openNotes: z.number(),
   /** Derived from the ledger: never sent, waiting for a reviewer, accepted, returned. */

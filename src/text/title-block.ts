@@ -41,6 +41,9 @@ export const titleBlockText = {
   alongIt: 'empty, its own elevation',
   dropsNeeded: 'Needed',
   dropsTraced: (count: string) => `${count} traced`,
+  /** Where the lines make the count that is stated, something else of the net is unfinished. */
+  dropsStated: (stated: string, traced: string | null) =>
+    `${stated} stated, ${traced === null || traced === stated ? 'net unfinished' : `${traced} traced`}`,
   channelsNone: 'None',
   unequal: 'Unequal intervals',
   notYet: 'Net unfinished',

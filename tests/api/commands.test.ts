@@ -33,7 +33,7 @@ describe('saving by commands', () => {
     const after = await openNet(caller, netId);
     expect(after.changeNumber).toBe(1);
     expect(entitiesOf(after.document, 'line').map((each) => each.value)).toEqual([line]);
-    expect(after.net.drops).toBe(10);
+    expect(singleOf(after.document, 'netCount')?.value.drops).toBe(10);
   });
 
   it('answers a repeat as the first time and applies it once', async () => {

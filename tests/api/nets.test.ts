@@ -1,7 +1,15 @@
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { type EntityKind, type entitiesOf, singleOf } from '#shared/contract/document.ts';
-import { addNet, addSheet, batchesOf, lineOf, openNet, put } from '#tests/support/net-fixture.ts';
+import { type EntityKind, entitiesOf, singleOf } from '#shared/contract/document.ts';
+import {
+  addFinishedNet,
+  addNet,
+  addSheet,
+  batchesOf,
+  lineOf,
+  openNet,
+  put,
+} from '#tests/support/net-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
@@ -86,6 +94,27 @@ describe('a net', () => {
     expect(detail).toMatchObject({ changeNumber: 0, revisionCount: 0 });
     expect(detail.drawnBy).toEqual([{ id: engineer.id, name: engineer.name }]);
     expect(detail.can).toContain('net.send');
+  });
+
+  it('has its drops in lists only while its lines bear out the count that is stated', async () => {
+    const { caller, netId, damId } = await addFinishedNet(app);
+    const listed = async () => {
+      const { body } = await caller.get(`/dams/${damId}/drawings`).expect(200);
+      return body.items[0].sections[0].nets[0].drops;
+    };
+    expect(await listed()).toBe(10);
+    const { document, net } = await openNet(caller, netId);
+    expect(net.drops).toBe(10);
+    const drain = entitiesOf(document, 'line').find(({ value }) => value.line === 'drain')!;
+    const send = batchesOf();
+    const removed = send([{ op: 'remove', entityId: drain.id, baseVersion: drain.version }]);
+    await caller.post(`/nets/${netId}/commands`, removed).expect(200);
+    expect(await listed()).toBeNull();
+    const after = await openNet(caller, netId);
+    expect(singleOf(after.document, 'netCount')?.value.drops).toBe(10);
+    expect(after.net.drops).toBeNull();
+    await caller.post(`/nets/${netId}/commands`, send([put(drain.value)])).expect(200);
+    expect(await listed()).toBe(10);
   });
 
   it("is in the dam's own units with its unit weight of water", async () => {

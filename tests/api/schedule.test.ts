@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { readNet } from '#shared/compute/read-net.ts';
-import { singleOf } from '#shared/contract/document.ts';
+import { entitiesOf, singleOf } from '#shared/contract/document.ts';
 import { netReading } from '#shared/contract/reading.ts';
 import {
   addFinishedNet,
@@ -61,21 +61,15 @@ describe('the schedule', () => {
     expect(ratio).toBeCloseTo(2, 9);
   });
 
-  it('of a tangle is refused in time, and nobody else has to wait for it', async () => {
+  it('of a tangle gives no figure and names the line that crosses itself', async () => {
     const { caller, netId } = await addNet(app);
     await fillNet(caller, netId, tangledDocument());
-    const refused = caller.get(`/nets/${netId}/schedule`).expect(422);
-    const other = await addFinishedNet(app);
-    await other.caller.get(`/nets/${other.netId}/schedule`).expect(200);
-    expect((await refused).body).toMatchObject({
-      code: 'net-unfinished',
-      detail: expect.stringMatching(/crosses itself/),
-    });
-    // It is known from now on, and the list of what waits goes on without it.
-    const asked = Date.now();
-    await caller.get(`/nets/${netId}/schedule`).expect(422);
-    await caller.get('/waiting').expect(200);
-    expect(Date.now() - asked).toBeLessThan(4000);
+    const { body } = await caller.get(`/nets/${netId}/schedule`).expect(200);
+    expect(body.state).toBe('unfinished');
+    const found = body.findings.find(({ code }: { code: string }) => code === 'lineCrossesItself');
+    const { document } = await openNet(caller, netId);
+    const base = entitiesOf(document, 'line').find(({ value }) => value.line === 'impervious');
+    expect(found).toMatchObject({ weight: 'wrong', entityIds: [base?.id] });
   });
 
   it('is downloaded as CSV under a name that says what it is of', async () => {

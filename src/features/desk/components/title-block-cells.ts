@@ -66,7 +66,7 @@ export function titleBlockCells(
     ['residual', residualOf(document, reading)],
     ['headwater', headwaterOf(document)],
     ['outlet', outletOf(document, reading)],
-    ['drops', dropsOf(reading)],
+    ['drops', dropsOf(document, reading)],
     ['channels', channelsOf(reading)],
     ['headPerDrop', headPerDropOf(document, reading)],
     ['permeability', permeabilityOf(document)],
@@ -141,13 +141,17 @@ function outletOf(document: FlowNetDocument, reading: NetReading | null): Told {
   };
 }
 
-function dropsOf(reading: NetReading | null): Told {
+/** The count that stands; else what is stated and what is traced, as far as either is known. */
+function dropsOf(document: FlowNetDocument, reading: NetReading | null): Told {
   const label = text.labels.drops;
   if (!reading) return { label, value: WAITING };
   const { drops, tracedDrops } = reading.quantities;
   if (drops !== null) return { label, value: [plainText(drops)] };
-  const value = tracedDrops === null ? text.dropsNeeded : text.dropsTraced(plainText(tracedDrops));
-  return { label, value: [value], state: 'missing' };
+  const stated = singleOf(document, 'netCount')?.value.drops ?? null;
+  const traced = tracedDrops === null ? null : plainText(tracedDrops);
+  if (stated !== null)
+    return { label, value: [text.dropsStated(plainText(stated), traced)], state: 'missing' };
+  return { label, value: [traced === null ? text.dropsNeeded : text.dropsTraced(traced)], state: 'missing' };
 }
 
 function channelsOf(reading: NetReading | null): Told {

@@ -6,9 +6,11 @@ import {
   titleBlockCells,
 } from '#client/features/desk/components/title-block-cells.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import type { DocumentEntity } from '#shared/contract/document.ts';
+import { type DocumentEntity, entitiesOf } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { documentWith, LINE_A, tracedLine } from '#tests/support/desk/desk-fixture.ts';
+import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
+import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 
 const FACTS = {
   damName: 'Harrow Fen Dam',
@@ -53,6 +55,27 @@ describe('the title block', () => {
   it('shows nothing worked out while there is no reading', () => {
     const cells = titleBlockCells(documentWith({}), null, FACTS);
     expect(plain(cells.find((each) => each.id === 'drops')?.value ?? [])).toBe('…');
+  });
+
+  it('says how many drops are stated while the net that would bear them out is unfinished', () => {
+    const { net, pxPerUnit } = EXACT_NETS[0]!;
+    const document = exactNetDocument(net, { pxPerUnit });
+    const first = (kind: string) => entitiesOf(document, 'line').find(({ value }) => value.line === kind)?.id;
+    const drops = (left: string | undefined, stated: number | null) => {
+      const entities = Object.values(document.entities)
+        .filter(({ id }) => id !== left)
+        .map((each) =>
+          each.value.kind === 'netCount' ? { ...each, value: { ...each.value, drops: stated } } : each,
+        );
+      const changed = { ...document, entities: Object.fromEntries(entities.map((each) => [each.id, each])) };
+      const cell = titleBlockCells(changed, readNet(changed), FACTS).find(({ id }) => id === 'drops');
+      return `${plain(cell?.value ?? [])} [${cell?.state}]`;
+    };
+    expect(drops(undefined, 10)).toBe('10 [ok]');
+    expect(drops(first('drain'), 10)).toBe('10 stated, net unfinished [missing]');
+    expect(drops(first('equipotential'), 10)).toBe('10 stated, 9 traced [missing]');
+    expect(drops(undefined, null)).toBe('10 traced [missing]');
+    expect(drops(first('drain'), null)).toBe('Needed [missing]');
   });
 
   it('does not pass two points off as a residual of zero', () => {
