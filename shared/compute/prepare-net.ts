@@ -14,11 +14,12 @@ import { questionPhreaticHeads } from '#shared/compute/net/phreatic-heads.ts';
 import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, placePoint, type ReadingGround } from '#shared/compute/net/read-point.ts';
+import { questionUpstream } from '#shared/compute/net/upstream-side.ts';
 import { checkWaterline } from '#shared/compute/net/waterline.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { SetOut } from '#shared/compute/set-out.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
-import { entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
+import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, NetReading } from '#shared/contract/reading.ts';
 
 /** The waterline may depart from the headwater by this part of a drop before the readings are withheld. */
@@ -69,6 +70,7 @@ export function prepareNet(
     ...heads.findings,
     ...waterlineFindings(model, heads, map, inputs),
     ...questionPhreaticHeads(model, heads, map, accuracy),
+    ...questionUpstream(singleOf(document, 'setOut')?.value.upstream ?? null, model.potentials, map),
     ...questionLevels(water, model.potentials),
     ...questionHeadwater(water.headwater, extentOf(model.lines, map), document.unitSystem),
     ...questionUnitWeight(water.gammaW, document.unitSystem),

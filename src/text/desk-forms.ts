@@ -46,6 +46,7 @@ export const setOutText = {
   result: 'Fit',
   scale: (scale: string) => `Scale ${scale}`,
   implied: (scale: string) => `which is 1 : ${scale} at the scan’s resolution`,
+  noResolution: 'The scan states no resolution, so the scale on the drawing cannot be compared with the fit.',
   rotation: (degrees: string) => `Turned by ${degrees}° on the sheet`,
   residualAll: (figure: string) => `Residual of all points ${figure}`,
   residualNone: 'Residual: none, two points only. A third point shows how far the fit can be trusted.',

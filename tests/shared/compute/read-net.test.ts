@@ -345,6 +345,16 @@ describe('implausible inputs are questioned but not refused', () => {
     expect(codesOf(readNet(parabolaNet()))).not.toContain('unitWeightImplausible');
   });
 
+  it('an upstream side that the headwater boundary denies, mirrored or not', () => {
+    for (const mirrored of [false, true]) {
+      const bed = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit, mirrored, turnDeg: 8 });
+      const saying = (upstream: 'left' | 'right') =>
+        codesOf(readNet(changed(bed, 'setOut', (value) => ({ ...value, upstream }))));
+      expect(saying(mirrored ? 'right' : 'left')).not.toContain('upstreamDisagrees');
+      expect(saying(mirrored ? 'left' : 'right')).toContain('upstreamDisagrees');
+    }
+  });
+
   it('a headwater with a digit too many', () => {
     const bed = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit });
     const reading = readNet(changed(bed, 'waterLevels', (value) => ({ ...value, headwater: 1060 })));

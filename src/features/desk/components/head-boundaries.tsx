@@ -2,6 +2,7 @@ import { Button } from '#client/components/button.tsx';
 import type { BoundaryKind } from '#client/features/desk/model/tool-choice.ts';
 import { formText, lineText, waterText as text } from '#client/text/desk-forms.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
+import { fixedText } from '#shared/text/number-text.ts';
 
 type Line = { id: string; value: TracedLine };
 type TraceChoice = keyof typeof text.trace;
@@ -10,11 +11,14 @@ const CARRIERS: readonly TracedLine['line'][] = ['submergedFace', 'outflowFace',
 /** The traced boundaries that carry a head of their own, each with what it carries and the way to change it. */
 export function HeadBoundaries({
   lines,
+  unit,
   disabled,
   onTrace,
   onOpenLine,
 }: {
   lines: readonly Line[];
+  /** Unit of a level with its datum. */
+  unit: string;
   disabled: boolean;
   onTrace: (boundary: BoundaryKind) => void;
   onOpenLine: (id: string) => void;
@@ -29,7 +33,7 @@ export function HeadBoundaries({
           <li key={id} className="flex items-baseline gap-2 py-1">
             <span className="min-w-0 break-words">
               <b className="font-semibold">{value.name || lineText.kinds[value.line]}</b>{' '}
-              <span className="text-ink-2">{carried(value)}</span>
+              <span className="text-ink-2">{carried(value, unit)}</span>
             </span>
             <button type="button" className="touch ml-auto text-sm underline" onClick={() => onOpenLine(id)}>
               {formText.show}
@@ -50,8 +54,9 @@ export function HeadBoundaries({
   );
 }
 
-function carried(line: TracedLine): string {
+function carried(line: TracedLine, unit: string): string {
   if (line.line === 'outflowFace') return text.carries.own;
   if (line.line === 'submergedFace') return line.water ? text.carries[line.water] : text.carries.unsaid;
-  return line.head === null ? text.drainStates.empty : `${text.drainStates.pressure}, ${line.head}`;
+  if (line.head === null) return text.drainStates.empty;
+  return `${text.drainStates.pressure}, ${fixedText(line.head, 2)} ${unit}`;
 }

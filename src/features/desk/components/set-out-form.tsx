@@ -58,7 +58,11 @@ export function SetOutForm({
         onCommit={(statedScale) => change({ statedScale })}
       />
       {reading?.setOut.state === 'fitted' ? (
-        <Fit setOut={reading.setOut} unit={unitNames(document.unitSystem).length} />
+        <Fit
+          setOut={reading.setOut}
+          stated={held.value.statedScale !== null}
+          unit={unitNames(document.unitSystem).length}
+        />
       ) : null}
     </FormPane>
   );
@@ -131,7 +135,7 @@ function turnName(turns: SetOut['upQuarterTurns']): '' | '0' | '1' | '2' | '3' {
   return turns === null ? '' : (`${turns}` as const);
 }
 
-function Fit({ setOut, unit }: { setOut: SetOutReading; unit: string }) {
+function Fit({ setOut, stated, unit }: { setOut: SetOutReading; stated: boolean; unit: string }) {
   const implied = setOut.impliedScale === null ? '' : `, ${text.implied(plainText(setOut.impliedScale, 3))}`;
   return (
     <section className="border-t border-rule pt-2">
@@ -140,6 +144,9 @@ function Fit({ setOut, unit }: { setOut: SetOutReading; unit: string }) {
         {text.scale(`${plainText(setOut.unitsPerPx, 4)} ${unit}/px`)}
         {implied}.
       </p>
+      {stated && setOut.impliedScale === null ? (
+        <p className="m-0 text-attention">{text.noResolution}</p>
+      ) : null}
       <p className="m-0">{text.rotation(signedText(setOut.rotationDeg, 2))}.</p>
       <p className="m-0">
         {setOut.residual === null

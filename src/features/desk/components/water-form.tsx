@@ -55,6 +55,7 @@ export function WaterForm({ fullSupplyLevel, onTrace, onOpenLine, ...form }: Wat
       />
       <HeadBoundaries
         lines={entitiesOf(document, 'line')}
+        unit={level}
         disabled={disabled}
         onTrace={onTrace}
         onOpenLine={onOpenLine}
