@@ -6,6 +6,8 @@ export interface TraceEvent {
   tid: number;
   ts: number;
   dur?: number;
+  /** Time the thread was on a processor, without waiting for one. */
+  tdur?: number;
   args?: { name?: string };
 }
 
@@ -41,6 +43,6 @@ function framesOfThread(events: TraceEvent[]): number[] {
     const within = tasks.filter(
       (task) => task.ts + (task.dur ?? 0) > begin && task.ts + (task.dur ?? 0) <= end,
     );
-    return within.reduce((sum, task) => sum + (task.dur ?? 0), 0) / 1000;
+    return within.reduce((sum, task) => sum + (task.tdur ?? task.dur ?? 0), 0) / 1000;
   });
 }
