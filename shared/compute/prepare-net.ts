@@ -21,6 +21,7 @@ import type { SetOut } from '#shared/compute/set-out.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, NetReading } from '#shared/contract/reading.ts';
+import { elevationUnit } from '#shared/text/unit-text.ts';
 
 /** The waterline may depart from the headwater by this part of a drop before the readings are withheld. */
 const WATERLINE_PART = 0.05;
@@ -82,7 +83,7 @@ export function prepareNet(
   return {
     model,
     heads,
-    ground: groundOf(model, heads, setOut, map, inputs),
+    ground: groundOf(document, model, heads, setOut, map, inputs),
     quantities,
     findings,
     finished,
@@ -110,6 +111,7 @@ function waterlineFindings(
 }
 
 function groundOf(
+  document: FlowNetDocument,
   model: NetModel,
   heads: NetHeads,
   setOut: SetOut,
@@ -131,6 +133,7 @@ function groundOf(
       .map((potential) => potential.shape),
     slack: slackOf(inputs),
     gammaW: inputs.water.gammaW,
+    levelUnit: elevationUnit(document.unitSystem, document.datum),
     placeDoubt: placeDoubtOf(
       setOut.reading.residual,
       knownPointAccuracyPx,

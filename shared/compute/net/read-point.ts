@@ -24,6 +24,8 @@ export type ReadingGround = {
   readonly freeFaces: readonly Polyline[];
   readonly slack: number;
   readonly gammaW: number;
+  /** Unit of a head or elevation with its datum, for words: "m LD". */
+  readonly levelUnit: string;
   readonly placeDoubt: number;
   readonly unequal: boolean;
 };
@@ -172,8 +174,8 @@ function withFigures(
     porePressure: ground.gammaW * pressureHead,
     porePressurePlusMinus: ground.gammaW * doubt.pressureHead,
     explanation: onFreeFace
-      ? `On the face of free outflow the total head is the elevation, ${fixedText(elevation, 2)}.`
-      : explain(before, after, hand.fraction, headBefore, headAfter, totalHead, dropsLost, ground.unequal),
+      ? `On the face of free outflow the total head is the elevation, ${fixedText(elevation, 2)} ${ground.levelUnit}.`
+      : explain(before, after, hand.fraction, headBefore, headAfter, totalHead, dropsLost, ground),
     findings: [
       ...negativePressure(point, pressureHead, sheetAt),
       ...nearOpenEnd(point, sheetAt, hand),
@@ -190,11 +192,11 @@ function explain(
   headAfter: number,
   totalHead: number,
   dropsLost: number,
-  unequal: boolean,
+  { unequal, levelUnit }: ReadingGround,
 ): string {
   const part = fixedText(fraction, 2);
   if (unequal) {
-    return `From ${before.label} (head ${fixedText(headBefore, 2)}) ${part} of the way to ${after.label} (head ${fixedText(headAfter, 2)}): total head ${fixedText(totalHead, 2)}.`;
+    return `From ${before.label} (head ${fixedText(headBefore, 2)}) ${part} of the way to ${after.label} (head ${fixedText(headAfter, 2)}): total head ${fixedText(totalHead, 2)} ${levelUnit}.`;
   }
   const drops = Math.round(before.drops * 100) / 100;
   const lead =
@@ -203,7 +205,7 @@ function explain(
       : `${drops} ${drops === 1 ? 'drop' : 'drops'} lost at ${before.label}, then`;
   const span = after.drops - before.drops;
   const of = Math.abs(span - 1) < 0.005 ? 'the drop' : `the ${Math.round(span * 100) / 100} drops`;
-  return `${lead} ${part} of ${of} from ${before.label} to ${after.label}: ${fixedText(dropsLost, 2)} drops lost, total head ${fixedText(totalHead, 2)}.`;
+  return `${lead} ${part} of ${of} from ${before.label} to ${after.label}: ${fixedText(dropsLost, 2)} drops lost, total head ${fixedText(totalHead, 2)} ${levelUnit}.`;
 }
 
 function abovePhreatic(point: PlacedPoint): PointReading {
