@@ -141,6 +141,8 @@ export const lineText = {
   name: 'Name',
   unfinished: 'This line is not finished and is left out of the reading.',
   counted: (drops: string, head: string) => `Counted: ${drops} drops down, head ${head}.`,
+  placed: (drops: string) =>
+    `By its order ${drops} drops down. It has no head while the count does not stand.`,
   uncounted: 'No count for this line yet.',
   typedDrops: 'Drops lost, typed',
   typedHead: (unit: string) => `Head printed on the drawing, ${unit}`,

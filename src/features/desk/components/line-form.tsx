@@ -113,7 +113,8 @@ function CountFields({ line, lineId, form, change }: KindFieldsProps) {
 function countedText(reading: NetReading | null, lineId: string, unit: string): string {
   const read = reading?.lines.find((each) => each.id === lineId);
   if (!read || read.drops === null) return text.uncounted;
-  return text.counted(plainText(read.drops), `${fixedText(read.head, 2)} ${unit}`);
+  const drops = plainText(read.drops);
+  return read.head === null ? text.placed(drops) : text.counted(drops, `${fixedText(read.head, 2)} ${unit}`);
 }
 
 /** A drain is under pressure only once its head is typed: until then it stays empty in the document. */
