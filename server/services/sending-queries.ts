@@ -7,6 +7,7 @@ import type { NetReading } from '#shared/contract/reading.ts';
 import type { SendingDto } from '#shared/contract/revisions.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { type NetPlace, placeOfNet, putAwayRefusal } from './net-place.ts';
+import { openPoints } from './open-points.ts';
 import { revisionLabel } from './revision-label.ts';
 import { readingOf } from './schedule-queries.ts';
 
@@ -78,7 +79,7 @@ export async function sendingOf(manager: EntityManager, netId: string, actorId: 
       email,
       drew: drew.has(id),
     })),
-    findings: reading.findings,
+    findings: [...reading.findings, ...(reading.state === 'read' ? openPoints(reading) : [])],
     openNotes: await manager.countBy(NoteEntity, { netId, closedAt: IsNull() }),
     refusal: refusal?.detail ?? null,
     nextLabel: revisionLabel((newest?.number ?? 0) + 1),
