@@ -6,6 +6,7 @@ import { joinBoundaries } from '#shared/compute/net/join-boundaries.ts';
 import { type HeadLine, neighbourLinks } from '#shared/compute/net/neighbours.ts';
 import { checkLines } from '#shared/compute/net/net-checks.ts';
 import { linesOfKind, medianLength, type NetLine, netLinesOf } from '#shared/compute/net/net-lines.ts';
+import { questionOpenEnds } from '#shared/compute/net/open-ends.ts';
 import { type FlowOrder, orderAlongFlow } from '#shared/compute/net/order.ts';
 import { type Potential, potentialsOf } from '#shared/compute/net/potentials.ts';
 import { type Strip, type StripLine, stripBetween } from '#shared/compute/net/strips.ts';
@@ -70,7 +71,13 @@ export function modelNet(
       ...findings,
       ...unfinishedLines(document),
       ...checkLines(equipotentials, flowLines, walls, accuracyPx, reach),
-      ...(findings.length === 0 ? orderFindings(order, equipotentials, potentials) : []),
+      // While a boundary is still to be marked, neither the order nor an open end says anything.
+      ...(findings.length === 0
+        ? [
+            ...orderFindings(order, equipotentials, potentials),
+            ...questionOpenEnds(equipotentials, lines, reach),
+          ]
+        : []),
     ],
   };
 }
