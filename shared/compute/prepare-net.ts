@@ -57,6 +57,7 @@ export function prepareNet(
   const { water, permeability, count } = inputs;
   const model = modelNet(document, map, water, count.tracingAccuracyPx);
   const accuracy = count.tracingAccuracyPx * map.unitsPerPx;
+  const levelUnit = elevationUnit(document.unitSystem, document.datum);
   const heads = headsOf(model, map, water.headwater, count.drops, accuracy);
   const channels = countChannels(model.equipotentials, linesOfKind(model.lines, 'flowLine'), slackOf(inputs));
   const { quantities, findings: quantityFindings } = quantitiesOf(
@@ -69,8 +70,8 @@ export function prepareNet(
     ...setOut.findings,
     ...model.findings,
     ...heads.findings,
-    ...waterlineFindings(model, heads, map, inputs),
-    ...questionPhreaticHeads(model, heads, map, accuracy),
+    ...waterlineFindings(model, heads, map, inputs, levelUnit),
+    ...questionPhreaticHeads(model, heads, map, accuracy, levelUnit),
     ...questionUpstream(singleOf(document, 'setOut')?.value.upstream ?? null, model.potentials, map),
     ...questionLevels(water, model.potentials),
     ...questionHeadwater(water.headwater, extentOf(model.lines, map), document.unitSystem),
@@ -83,7 +84,7 @@ export function prepareNet(
   return {
     model,
     heads,
-    ground: groundOf(document, model, heads, setOut, map, inputs),
+    ground: groundOf(model, heads, setOut, map, inputs, levelUnit),
     quantities,
     findings,
     finished,
@@ -100,6 +101,7 @@ function waterlineFindings(
   heads: NetHeads,
   map: SectionMap,
   inputs: SingleInputs,
+  levelUnit: string,
 ): Finding[] {
   if (heads.headwater === null) return [];
   const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
@@ -107,16 +109,16 @@ function waterlineFindings(
     3 * Math.hypot(tracingAccuracyPx, knownPointAccuracyPx) * map.unitsPerPx,
     WATERLINE_PART * (heads.count?.headPerDrop ?? 0),
   );
-  return checkWaterline(model.lines, map, heads.headwater, tolerance);
+  return checkWaterline(model.lines, map, heads.headwater, tolerance, levelUnit);
 }
 
 function groundOf(
-  document: FlowNetDocument,
   model: NetModel,
   heads: NetHeads,
   setOut: SetOut,
   map: SectionMap,
   inputs: SingleInputs,
+  levelUnit: string,
 ): ReadingGround {
   const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
   const shapes = (...kinds: Parameters<typeof linesOfKind>[1][]) =>
@@ -133,7 +135,7 @@ function groundOf(
       .map((potential) => potential.shape),
     slack: slackOf(inputs),
     gammaW: inputs.water.gammaW,
-    levelUnit: elevationUnit(document.unitSystem, document.datum),
+    levelUnit,
     placeDoubt: placeDoubtOf(
       setOut.reading.residual,
       knownPointAccuracyPx,

@@ -14,7 +14,7 @@ const ALLOWED_PART = 1 / 3;
 /**
  * Questions a count or a level that the phreatic line denies: the pressure on it is nil, so that an equipotential meets
  * it at the elevation of its own head. Heads and elevations in the document's length unit; `accuracy` is the tracing
- * accuracy in it. One finding, at the line that departs most; nothing while the count does not stand. Source:
+ * accuracy in it, `levelUnit` its name with the datum, for words. One finding, at the line that departs most; nothing while the count does not stand. Source:
  * Casagrande (1937), Seepage through dams.
  */
 export function questionPhreaticHeads(
@@ -22,6 +22,7 @@ export function questionPhreaticHeads(
   heads: NetHeads,
   map: SectionMap,
   accuracy: number,
+  levelUnit: string,
 ): Finding[] {
   const phreatic = linesOfKind(model.lines, 'phreaticLine').map((line) => line.id);
   const allowed = Math.max(ALLOWED_PART * (heads.count?.headPerDrop ?? 0), 3 * accuracy);
@@ -35,7 +36,7 @@ export function questionPhreaticHeads(
     makeFinding(
       'question',
       'phreaticHeadDiffers',
-      `Where ${worst.label} meets the phreatic line its head is ${fixedText(worst.head, 2)}, but the elevation there is ${fixedText(worst.elevation, 2)}; on the phreatic line both are one. Check the count, the levels and whether a line was left out.`,
+      `Where ${worst.label} meets the phreatic line its head is ${fixedText(worst.head, 2)} ${levelUnit}, but the elevation there is ${fixedText(worst.elevation, 2)} ${levelUnit}; on the phreatic line both are one. Check the count, the levels and whether a line was left out.`,
       { cell: 'netCheck', entityIds: [worst.id], at: worst.at },
     ),
   ];

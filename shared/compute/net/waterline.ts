@@ -11,18 +11,19 @@ import { fixedText } from '#shared/text/number-text.ts';
  * Compares the headwater with the waterline that was traced: the place where the phreatic line starts at the submerged
  * face. `headwater` and `tolerance` in the document's length unit. A net holds for the water level for which it was
  * drawn, so a departure beyond the tolerance withholds every reading; a section without a phreatic line is confined
- * and takes any headwater that covers its bed.
+ * and takes any headwater that covers its bed. `levelUnit`: unit of an elevation with its datum, for words.
  */
 export function checkWaterline(
   lines: readonly NetLine[],
   map: SectionMap,
   headwater: number,
   tolerance: number,
+  levelUnit: string,
 ): Finding[] {
   const faces = linesOfKind(lines, 'submergedFace').filter((line) => line.value.water === 'headwater');
   const phreatics = linesOfKind(lines, 'phreaticLine');
   const starts = phreatics.map((line) => ({ line, at: startOf(line, faces) }));
-  if (starts.length === 0) return questionFaces(faces, map, headwater, tolerance);
+  if (starts.length === 0) return questionFaces(faces, map, headwater, tolerance, levelUnit);
   const highest = starts
     .map((start) => ({ ...start, elevation: elevationAt(map, ...start.at) }))
     .sort((a, b) => b.elevation - a.elevation)[0]!;
@@ -31,7 +32,7 @@ export function checkWaterline(
     makeFinding(
       'wrong',
       'headwaterMoved',
-      `The phreatic line starts at elevation ${fixedText(highest.elevation, 2)}, but the headwater is ${fixedText(headwater, 2)}. A net holds for the level it was drawn for: trace it again for this headwater, or correct the level.`,
+      `The phreatic line starts at elevation ${fixedText(highest.elevation, 2)} ${levelUnit}, but the headwater is ${fixedText(headwater, 2)} ${levelUnit}. A net holds for the level it was drawn for: trace it again for this headwater, or correct the level.`,
       { cell: 'headwater', entityIds: [highest.line.id], at: highest.at },
     ),
   ];
@@ -43,6 +44,7 @@ function questionFaces(
   map: SectionMap,
   headwater: number,
   tolerance: number,
+  levelUnit: string,
 ): Finding[] {
   return faces.flatMap((face) => {
     const top = verticesOf(face.shape)
@@ -53,7 +55,7 @@ function questionFaces(
       makeFinding(
         'question',
         'faceSticksOut',
-        `The submerged face is traced up to elevation ${fixedText(top.elevation, 2)} and is cut off at the headwater, ${fixedText(headwater, 2)}. If it was traced to the waterline, the net holds for that level.`,
+        `The submerged face is traced up to elevation ${fixedText(top.elevation, 2)} ${levelUnit} and is cut off at the headwater, ${fixedText(headwater, 2)} ${levelUnit}. If it was traced to the waterline, the net holds for that level.`,
         { cell: 'headwater', entityIds: [face.id], at: top.at },
       ),
     ];

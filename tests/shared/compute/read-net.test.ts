@@ -218,6 +218,9 @@ describe('the headwater', () => {
       'headwaterMoved',
     );
     expect(reading.points[0]?.reason?.code).toBe('headwaterMoved');
+    expect(reading.points[0]?.reason?.text).toMatch(
+      /elevation 118\.00 m LD, but the headwater is 117\.00 m LD\./,
+    );
   });
 
   it('may stand at any height over a confined bed', () => {
@@ -235,7 +238,10 @@ describe('the headwater', () => {
       return i === 0 ? { ...value, points: [...value.points, [x - 100, y - 800]] } : value;
     });
     const reading = readNet(bank);
-    expect(codesOf(reading)).toContain('faceSticksOut');
+    const found = reading.findings.find((each) => each.code === 'faceSticksOut');
+    expect(found?.text).toMatch(
+      /up to elevation \d+\.\d\d m LD and is cut off at the headwater, 106\.00 m LD\./,
+    );
     expect(reading.state).toBe('read');
   });
 
@@ -366,7 +372,8 @@ describe('implausible inputs are questioned but not refused', () => {
     const short = withLines(parabolaNet(), 'equipotential', (value, i) => (i === 4 ? null : value));
     const reading = readNet(changed(short, 'netCount', (value) => ({ ...value, drops: 9 })));
     expect(reading.state).toBe('read');
-    expect(codesOf(reading)).toContain('phreaticHeadDiffers');
+    const found = reading.findings.find((each) => each.code === 'phreaticHeadDiffers');
+    expect(found?.text).toMatch(/its head is \d+\.\d\d m LD, but the elevation there is \d+\.\d\d m LD;/);
     expect(codesOf(readNet(parabolaNet()))).not.toContain('phreaticHeadDiffers');
   });
 
