@@ -109,7 +109,7 @@ export function readPoint(point: PlacedPoint, ground: ReadingGround): PointReadi
     return withholdPoint(
       point,
       'acrossWall',
-      'A wall lies between the point and its neighbouring lines. Check the boundary there.',
+      'A wall, or a maze of walls, lies between the point and its neighbouring lines. Check the boundary there.',
     );
   }
   const before = ground.heads.byId.get(strip.before);

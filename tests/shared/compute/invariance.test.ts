@@ -88,7 +88,14 @@ describe.each(EXACT_NETS)(
             expectSame(drops, plain, SAME);
           },
         ),
-        { numRuns: 12 },
+        {
+          numRuns: 12,
+          // Base and drain of the parabola run into one another: turned so, rounding once moved their meeting.
+          examples: [
+            [-4.849680575135026, 0, false],
+            [-4.849680575135026, 0, true],
+          ],
+        },
       );
     });
 

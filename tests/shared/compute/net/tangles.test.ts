@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { readField } from '#shared/compute/field/read-field.ts';
 import { readNet } from '#shared/compute/read-net.ts';
+import { similarityBackward } from '#shared/compute/similarity.ts';
 import type { FlowNetDocument, LineKind, SheetPoint, TracedLine } from '#shared/contract/document.ts';
-import { entityIdOf, exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
+import { entityIdOf, exactNetDocument, sheetMapOf } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 import { randomReadings } from '#tests/support/exact-nets/random-readings.ts';
 import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
@@ -119,4 +120,25 @@ it('lines that cross one another far more often than those of a net are named, a
   const { state, findings } = readNet(document);
   expect(state).toBe('unfinished');
   expect(findings.find(({ code }) => code === 'linesTangled')?.entityIds).toEqual([entityIdOf(903), id]);
+});
+
+// Once 105 s and more: the maze crosses nothing that it must not, and every point has to be read in it.
+it('a maze of 40 walls of 100 vertices between the lines of a net is read, or the points are withheld, in time', {
+  timeout: 20_000,
+}, () => {
+  const document = exactNetDocument(net, { pxPerUnit, readings: randomReadings(net, 200, 6, 0.1) });
+  const map = sheetMapOf(net, { pxPerUnit });
+  const at = (drops: number, channel: number): SheetPoint =>
+    similarityBackward(map, ...net.placeAt(drops, channel));
+  for (let wall = 0; wall < 40; wall += 1) {
+    const id = entityIdOf(2000 + wall);
+    const points = Array.from({ length: 100 }, (_, k) =>
+      at((wall % 10) + 0.1 + 0.008 * k, 0.1 + 0.65 * Math.floor(wall / 10) + (k % 2) * 0.6),
+    );
+    const line = withLine('impervious', points, id).entities[id]!;
+    document.entities[id] = line;
+  }
+  const { state, points } = readNet(document);
+  expect(state).toBe('read');
+  for (const point of points) expect(['read', 'acrossWall']).toContain(point.reason?.code ?? 'read');
 });
