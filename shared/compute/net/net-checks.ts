@@ -22,8 +22,12 @@ export function checkLines(
   accuracyPx: number,
   reach: number,
 ): Finding[] {
+  const repeats = repeatsOf(equipotentials, accuracyPx);
   return [
-    ...pairwise(equipotentials, (a, b) => checkPair(a, b, accuracyPx, reach)),
+    ...repeats.map(tracedAgain),
+    ...pairwise(equipotentials, (a, b) =>
+      repeats.some((lines) => lines.includes(a) && lines.includes(b)) ? null : checkPair(a, b, reach),
+    ),
     ...equipotentials.flatMap((line) => walls.flatMap((wall) => checkWall(line, wall, reach))),
     ...pairwise(flowLines, (a, b) => checkFlowLines(a, b, reach)),
   ];
@@ -35,35 +39,56 @@ function pairwise<T>(items: readonly T[], check: (a: T, b: T) => Finding | null)
     .filter((found) => found !== null);
 }
 
-function checkPair(
-  a: FootedEquipotential,
-  b: FootedEquipotential,
+/** How often in words, for a pair that meets more than once: it has one finding, at the first place. */
+function inPlaces(places: readonly unknown[]): string {
+  return places.length === 1 ? '' : ` in ${places.length} places`;
+}
+
+/** Equipotentials that lie along one another, all tracings of one line together. */
+function repeatsOf(
+  equipotentials: readonly FootedEquipotential[],
   accuracyPx: number,
-  reach: number,
-): Finding | null {
-  if (
+): FootedEquipotential[][] {
+  const groups: FootedEquipotential[][] = [];
+  for (const line of equipotentials) {
+    const group = groups.find((lines) => lines.some((other) => areOne(other, line, accuracyPx)));
+    if (group) group.push(line);
+    else groups.push([line]);
+  }
+  return groups.filter((lines) => lines.length > 1);
+}
+
+function areOne(a: FootedEquipotential, b: FootedEquipotential, accuracyPx: number): boolean {
+  return (
     liesAlong(a.footed.shape, b.footed.shape, accuracyPx) &&
     liesAlong(b.footed.shape, a.footed.shape, accuracyPx)
-  ) {
-    return makeFinding(
-      'wrong',
-      'tracedTwice',
-      'An equipotential has been traced twice. Delete one of the two lines.',
-      {
-        cell: 'netCheck',
-        entityIds: [a.id, b.id],
-        at: pointAlong(a.footed.shape, lengthOf(a.footed.shape) / 2),
-      },
-    );
-  }
-  const crossing = crossingsOf(a.footed.shape, b.footed.shape).find(
+  );
+}
+
+function tracedAgain(lines: readonly FootedEquipotential[]): Finding {
+  const { shape } = lines[0]!.footed;
+  const text =
+    lines.length === 2
+      ? 'An equipotential has been traced twice. Delete one of the two lines.'
+      : `An equipotential has been traced ${lines.length} times. Delete all of these lines but one.`;
+  return makeFinding('wrong', 'tracedTwice', text, {
+    cell: 'netCheck',
+    entityIds: lines.map(({ id }) => id),
+    at: pointAlong(shape, lengthOf(shape) / 2),
+  });
+}
+
+function checkPair(a: FootedEquipotential, b: FootedEquipotential, reach: number): Finding | null {
+  const places = crossingsOf(a.footed.shape, b.footed.shape).filter(
     (place) => !(isAtFoot(a.footed, place.s, reach) && isAtFoot(b.footed, place.t, reach)),
   );
-  if (crossing === undefined) return null;
-  return makeFinding('wrong', 'equipotentialsCross', 'Two equipotentials cross. Correct one of them.', {
+  const [first] = places;
+  if (!first) return null;
+  const text = `Two equipotentials cross${inPlaces(places)}. Correct one of them.`;
+  return makeFinding('wrong', 'equipotentialsCross', text, {
     cell: 'netCheck',
     entityIds: [a.id, b.id],
-    at: crossing.at,
+    at: first.at,
   });
 }
 
@@ -86,27 +111,31 @@ function liesAlong(line: Polyline, other: Polyline, accuracyPx: number): boolean
 
 function checkWall(line: FootedEquipotential, wall: NetLine, reach: number): Finding[] {
   const length = lengthOf(line.footed.shape);
-  const through = crossingsOf(line.footed.shape, wall.shape).find(
+  const places = crossingsOf(line.footed.shape, wall.shape).filter(
     (crossing) => crossing.s > reach && crossing.s < length - reach,
   );
-  if (through === undefined) return [];
+  const [first] = places;
+  if (!first) return [];
   const what = wall.kind === 'phreaticLine' ? 'the phreatic line' : 'an impervious boundary';
   return [
-    makeFinding('wrong', 'lineThroughWall', `An equipotential runs through ${what}. End it there.`, {
-      cell: 'netCheck',
-      entityIds: [line.id, wall.id],
-      at: through.at,
-    }),
+    makeFinding(
+      'wrong',
+      'lineThroughWall',
+      `An equipotential runs through ${what}${inPlaces(places)}. End it there.`,
+      { cell: 'netCheck', entityIds: [line.id, wall.id], at: first.at },
+    ),
   ];
 }
 
 function checkFlowLines(a: NetLine, b: NetLine, reach: number): Finding | null {
   const length = lengthOf(a.shape);
-  const crossing = crossingsOf(a.shape, b.shape).find((place) => place.s > reach && place.s < length - reach);
-  if (crossing === undefined) return null;
-  return makeFinding('question', 'flowLinesCross', 'Two flow lines cross. Correct one of them.', {
+  const places = crossingsOf(a.shape, b.shape).filter(({ s }) => s > reach && s < length - reach);
+  const [first] = places;
+  if (!first) return null;
+  const text = `Two flow lines cross${inPlaces(places)}. Correct one of them.`;
+  return makeFinding('question', 'flowLinesCross', text, {
     cell: 'netCheck',
     entityIds: [a.id, b.id],
-    at: crossing.at,
+    at: first.at,
   });
 }
