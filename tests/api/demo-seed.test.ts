@@ -1,6 +1,8 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { netStateText } from '#client/text/drawings.ts';
 import { DEMO_PASSWORD, engineer, reviewer } from '#server/demo/demo-people.ts';
 import { apron, fullSupply, isTaken, seedDemo } from '#server/demo/seed-demo.ts';
+import type { DrawingDto } from '#shared/contract/drawings.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 
@@ -47,6 +49,14 @@ describe('the demo', () => {
     const kinds = waiting.items.map((item: { kind: string }) => item.kind);
     expect(kinds).toContain('calibrate');
     expect(kinds).toContain('trace');
+    const { body: dams } = await caller.get('/dams').expect(200);
+    const { body: drawings } = await caller.get(`/dams/${dams.items[0].id}/drawings`).expect(200);
+    const nets = (drawings.items as DrawingDto[]).flatMap((drawing) =>
+      drawing.sections.flatMap((section) => section.nets),
+    );
+    const stateOf = (name: string) => nets.filter((net) => net.name === name).map(netStateText);
+    expect(stateOf('Redrawn for the review')).toEqual(['not finished']);
+    expect(nets.find((net) => net.id === fullSupply)?.drops).toBe(10);
   });
 
   it('has given the reviewer something to check, with its mail in the outbox', async () => {
