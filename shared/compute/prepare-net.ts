@@ -2,6 +2,7 @@ import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
 import {
   extentOf,
+  questionCellRatio,
   questionHeadwater,
   questionLevels,
   questionPermeability,
@@ -14,6 +15,7 @@ import { questionPhreaticHeads } from '#shared/compute/net/phreatic-heads.ts';
 import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, placePoint, type ReadingGround } from '#shared/compute/net/read-point.ts';
+import { questionSoils } from '#shared/compute/net/soil-boundaries.ts';
 import { questionUpstream } from '#shared/compute/net/upstream-side.ts';
 import { checkWaterline } from '#shared/compute/net/waterline.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
@@ -77,6 +79,8 @@ export function prepareNet(
     ...questionHeadwater(water.headwater, extentOf(model.lines, map), document.unitSystem),
     ...questionUnitWeight(water.gammaW, document.unitSystem),
     ...questionPermeability(permeability),
+    ...questionCellRatio(count.cellRatio),
+    ...questionSoils(model),
     ...channels.findings,
     ...quantityFindings,
   ];

@@ -1,4 +1,9 @@
-import { extentOf, questionPermeability, questionPlace } from '#shared/compute/net/input-questions.ts';
+import {
+  extentOf,
+  questionCellRatio,
+  questionPermeability,
+  questionPlace,
+} from '#shared/compute/net/input-questions.ts';
 import type { NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind, netLinesOf } from '#shared/compute/net/net-lines.ts';
 import type { NetModel } from '#shared/compute/net/net-model.ts';
@@ -36,7 +41,12 @@ function withoutNet(
   inputs: SingleInputs,
   points: readonly PlacedPoint[],
 ): NetReading {
-  const findings = [...setOut.findings, ...tangles, ...questionPermeability(inputs.permeability)];
+  const findings = [
+    ...setOut.findings,
+    ...tangles,
+    ...questionPermeability(inputs.permeability),
+    ...questionCellRatio(inputs.count.cellRatio),
+  ];
   return {
     state: 'unfinished',
     findings,

@@ -11,6 +11,9 @@ import type { Finding } from '#shared/contract/reading.ts';
 /** Soils and rocks lie within these permeabilities, m/s; what lies outside is more often a slip of the unit. */
 const LEAST_K = 1e-13;
 const GREATEST_K = 1;
+/** Cells of a drawn net lie within these ratios of width across the flow to length along it. */
+const LEAST_CELL_RATIO = 0.2;
+const GREATEST_CELL_RATIO = 5;
 /** A point farther than this off the traced section, in metres, is more often a slip of the sign or of the figure. */
 const FAR_METRES = 100;
 const FAR_FEET = 330;
@@ -88,6 +91,19 @@ export function questionPermeability(permeability: EntityOf<'permeability'>): Fi
       'permeabilityImplausible',
       'The permeability lies outside the range of soils and rock, 1e-13 to 1 m/s. Check the figure and its unit.',
       { cell: 'permeability' },
+    ),
+  ];
+}
+
+/** Questions a ratio of the cells, B/L, outside 0.2 to 5: more often its inverse, or a count typed in its place. */
+export function questionCellRatio(cellRatio: number): Finding[] {
+  if (cellRatio >= LEAST_CELL_RATIO && cellRatio <= GREATEST_CELL_RATIO) return [];
+  return [
+    makeFinding(
+      'question',
+      'cellRatioImplausible',
+      `B/L is entered as ${cellRatio}; the cells of a net lie between ${LEAST_CELL_RATIO} and ${GREATEST_CELL_RATIO}. Check that it is the width of a cell across the flow over its length along it.`,
+      { cell: 'channels' },
     ),
   ];
 }

@@ -345,6 +345,14 @@ describe('implausible inputs are questioned but not refused', () => {
     expect(reading.state).toBe('read');
   });
 
+  it('a ratio of the cells that no drawn net has', () => {
+    const codesAt = (cellRatio: number) =>
+      codesOf(readNet(changed(parabolaNet(), 'netCount', (value) => ({ ...value, cellRatio }))));
+    expect(codesAt(0.19)).toContain('cellRatioImplausible');
+    expect(codesAt(5.1)).toContain('cellRatioImplausible');
+    for (const plausible of [0.2, 1, 5]) expect(codesAt(plausible)).not.toContain('cellRatioImplausible');
+  });
+
   it('a unit weight of water of the other unit system', () => {
     const reading = readNet(changed(parabolaNet(), 'waterLevels', (value) => ({ ...value, gammaW: 62.4 })));
     expect(codesOf(reading)).toContain('unitWeightImplausible');

@@ -190,7 +190,7 @@ function seepageOf(document: FlowNetDocument, reading: NetReading | null): Told 
   if (seepage !== null) {
     const only = channelsComplete ? '' : `, ${text.tracedChannelsOnly}`;
     const value = [...powerRuns(seepage, seepageFigures), ` ${si ? 'm' : 'ft'}`, { sup: '3' }, `/s${only}`];
-    return { label, value, state: channelsComplete ? 'ok' : 'question' };
+    return { label, value, state: channelsComplete ? undefined : 'question' };
   }
   if (unequalIntervals) return { label, value: [text.unequal], state: 'question' };
   if (reading.state === 'unfinished') return { label, value: [text.notYet], state: 'missing' };

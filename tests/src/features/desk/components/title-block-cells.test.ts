@@ -78,6 +78,24 @@ describe('the title block', () => {
     expect(drops(first('drain'), null)).toBe('Needed [missing]');
   });
 
+  it('questions the seepage and the channels that it shows, where their findings do', () => {
+    const { net, pxPerUnit } = EXACT_NETS[0]!;
+    const document = exactNetDocument(net, { pxPerUnit });
+    const [across] = entitiesOf(document, 'line').filter(({ value }) => value.line === 'equipotential');
+    const states = (entities: typeof document.entities) => {
+      const cells = titleBlockCells({ ...document, entities }, readNet({ ...document, entities }), FACTS);
+      return (['channels', 'seepage'] as const).map((id) => cells.find((cell) => cell.id === id)?.state);
+    };
+    expect(states(document.entities)).toEqual(['ok', 'ok']);
+    const beside = across!.value.points.map(([x, y]): [number, number] => [x + 5, y]);
+    const soil = tracedLine(beside, { line: 'soilBoundary' });
+    const withSoil = { ...document.entities, [ID(1)]: { id: ID(1), version: 1, value: soil } };
+    expect(states(withSoil)).toEqual(['ok', 'question']);
+    const [count] = entitiesOf(document, 'netCount');
+    const oblong = { id: count!.id, version: 2, value: { ...count!.value, cellRatio: 6 } };
+    expect(states({ ...document.entities, [oblong.id]: oblong })).toEqual(['question', 'ok']);
+  });
+
   it('does not pass two points off as a residual of zero', () => {
     const point = (x: number, offset: number): DocumentEntity => ({
       kind: 'knownPoint',
