@@ -66,6 +66,8 @@ export const waterText = {
   takeFullSupply: (level: string) => `Take the full supply level, ${level}`,
   gammaW: (unit: string) => `Unit weight of water γw, ${unit}`,
   below: 'The headwater lies below the tailwater. Check both figures.',
+  farAboveFullSupply: (most: string, level: string) =>
+    `The headwater lies more than ${most} above the full supply level of the dam, ${level}. Check the figure.`,
   boundaries: 'Boundaries that carry a head',
   noBoundaries: 'None traced yet. Trace the face under the headwater and the outlet as boundaries.',
   trace: {

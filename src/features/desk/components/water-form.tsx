@@ -8,6 +8,7 @@ import type { DeskFormProps } from './desk-form.ts';
 import { Figure, NeededFigure, Words } from './form-fields.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
 import { HeadBoundaries } from './head-boundaries.tsx';
+import { headwaterQuestion } from './headwater-question.ts';
 
 type WaterLevels = EntityOf<'waterLevels'>;
 
@@ -26,7 +27,6 @@ export function WaterForm({ fullSupplyLevel, onTrace, onOpenLine, ...form }: Wat
   const { headwater, tailwater, gammaW, source } = held.value;
   const change = (changes: Partial<WaterLevels>) =>
     run(text.labels.levels, [{ op: 'put', entityId: held.id, value: { ...held.value, ...changes } }]);
-  const below = headwater !== null && tailwater !== null && headwater < tailwater;
   return (
     <FormPane title={text.title} onClose={form.onClose}>
       <FormFindings findings={findingsFor(reading?.findings, 'headwater', 'outlet')} />
@@ -35,7 +35,7 @@ export function WaterForm({ fullSupplyLevel, onTrace, onOpenLine, ...form }: Wat
         value={headwater}
         optional
         disabled={disabled}
-        question={below ? text.below : null}
+        question={headwaterQuestion(held.value, fullSupplyLevel, document)}
         onCommit={(next) => change({ headwater: next })}
       />
       {headwater === null && fullSupplyLevel !== null && !disabled ? (
