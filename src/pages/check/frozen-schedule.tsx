@@ -1,8 +1,9 @@
+import { useState } from 'react';
 import { useStore } from 'zustand';
 import { buttonClass } from '#client/components/button.tsx';
 import { Schedule } from '#client/features/desk/components/schedule.tsx';
 import { ScheduleState } from '#client/features/desk/components/schedule-pane.tsx';
-import { scheduleLead } from '#client/features/desk/components/schedule-rows.ts';
+import { ENTERED_ORDER, type Sort, scheduleLead } from '#client/features/desk/components/schedule-rows.ts';
 import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
 import { downloadText } from '#client/lib/download.ts';
 import { checkText } from '#client/text/revisions.ts';
@@ -13,6 +14,7 @@ import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 /** The schedule as it was frozen: shown, sorted and kept as CSV, never worked out again. */
 export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; store: DeskStore }) {
   const { document, reading } = payload;
+  const [sort, setSort] = useState<Sort>(ENTERED_ORDER);
   const selection = useStore(store, (state) => state.selection);
   const download = () => {
     const name = `${payload.drawing.number || 'net'}-${payload.label}-schedule.csv`;
@@ -40,6 +42,8 @@ export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; s
         <Schedule
           document={document}
           reading={reading}
+          sort={sort}
+          onSort={setSort}
           onEdit={null}
           selectedIds={selection.kind === 'readingPoint' ? selection.ids : []}
           onSelect={(id) => store.select({ kind: 'readingPoint', ids: [id] })}

@@ -1,4 +1,4 @@
-import { useEffect, useRef } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { buttonClass } from '#client/components/button.tsx';
 import { useNotice } from '#client/components/notice.tsx';
@@ -9,7 +9,7 @@ import type { NetReading } from '#shared/contract/reading.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { Schedule } from './schedule.tsx';
 import type { Edit } from './schedule-edits.ts';
-import { ENTERED_ORDER, scheduleLead, sortedPoints } from './schedule-rows.ts';
+import { ENTERED_ORDER, type Sort, scheduleLead } from './schedule-rows.ts';
 import { scheduleTsv } from './schedule-text.ts';
 
 interface SchedulePaneProps {
@@ -25,6 +25,7 @@ interface SchedulePaneProps {
 export function SchedulePane({ store, onDownload, onAdd, className = '' }: SchedulePaneProps) {
   const { document, reading, documentRevision, readingOf, readingFailed, readOnly, selection } =
     useStore(store);
+  const [sort, setSort] = useState<Sort>(ENTERED_ORDER);
   const box = useRef<HTMLElement>(null);
   const notice = useNotice();
   const stale = readingOf !== documentRevision;
@@ -32,7 +33,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '' }: Sched
   useSelectedInView(box, selectedIds[0]);
   const copy = async () => {
     if (!reading) return;
-    const done = await copyText(scheduleTsv(document, sortedPoints(reading.points, ENTERED_ORDER)));
+    const done = await copyText(scheduleTsv(document, reading.points, sort));
     notice(done ? text.copied : text.notCopied);
   };
   const edit = (made: Edit) => {
@@ -63,6 +64,8 @@ export function SchedulePane({ store, onDownload, onAdd, className = '' }: Sched
           <Schedule
             document={document}
             reading={reading}
+            sort={sort}
+            onSort={setSort}
             onEdit={readOnly ? null : edit}
             selectedIds={selectedIds}
             onSelect={select}

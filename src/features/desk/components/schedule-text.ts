@@ -1,21 +1,22 @@
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 import { MINUS } from '#shared/text/number-text.ts';
-import { pointFigures, pointRemark, scheduleColumns } from './schedule-rows.ts';
+import { pointFigures, pointRemark, type Sort, scheduleColumns, sortedPoints } from './schedule-rows.ts';
 
 /** Text a spreadsheet would run as a formula when it is pasted. */
 const FORMULA_START = /^[\s\p{Cc}]*[=+\-@＝＋－＠|]/u;
 
 /**
- * The schedule as it stands on the screen, tabs between columns, for pasting into a spreadsheet: minus signs as
+ * The schedule as it stands on the screen, in the order shown there, tabs between columns, for pasting into a spreadsheet: minus signs as
  * spreadsheets read them, the ± in columns of their own, so that every figure arrives as a number.
  */
 export function scheduleTsv(
   document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
   points: readonly PointReading[],
+  sort: Sort,
 ): string {
   const heads = scheduleColumns(document).map((each) => each.label);
-  const rows = points.map((point) => rowOf(point, document));
+  const rows = sortedPoints(points, sort).map((point) => rowOf(point, document));
   return [withDoubtHeads(heads), ...rows].map((cells) => cells.map(cellText).join('\t')).join('\n');
 }
 

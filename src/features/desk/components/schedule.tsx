@@ -6,7 +6,6 @@ import type { NetReading, PointReading } from '#shared/contract/reading.ts';
 import { type Edit, removePoint } from './schedule-edits.ts';
 import { ScheduleRow } from './schedule-row.tsx';
 import {
-  ENTERED_ORDER,
   nextSort,
   pointRemark,
   type ScheduleColumn,
@@ -18,6 +17,9 @@ import {
 interface ScheduleProps {
   document: FlowNetDocument;
   reading: NetReading;
+  /** The order shown, held by whoever copies the table too. */
+  sort: Sort;
+  onSort: (sort: Sort) => void;
   /** Null where the schedule is frozen or may not be edited. */
   onEdit: ((edit: Edit) => void) | null;
   selectedIds: readonly string[];
@@ -25,8 +27,7 @@ interface ScheduleProps {
 }
 
 /** The table of reading points: sorted by its heads, edited where it stands, each row with its count in words. */
-export function Schedule({ document, reading, onEdit, selectedIds, onSelect }: ScheduleProps) {
-  const [sort, setSort] = useState<Sort>(ENTERED_ORDER);
+export function Schedule({ document, reading, sort, onSort, onEdit, selectedIds, onSelect }: ScheduleProps) {
   const [openId, setOpenId] = useState<string | null>(null);
   const columns = scheduleColumns(document);
   return (
@@ -35,7 +36,7 @@ export function Schedule({ document, reading, onEdit, selectedIds, onSelect }: S
       <thead>
         <tr>
           {columns.map((column) => (
-            <Head key={column.column} column={column} sort={sort} onSort={setSort} />
+            <Head key={column.column} column={column} sort={sort} onSort={onSort} />
           ))}
           <th scope="col" className="border-b border-rule px-2">
             <span className="sr-only">{text.head.count}</span>

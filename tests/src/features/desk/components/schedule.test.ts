@@ -1,15 +1,21 @@
+import { createElement } from 'react';
+import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
+import { Schedule } from '#client/features/desk/components/schedule.tsx';
 import { typePlace } from '#client/features/desk/components/schedule-edits.ts';
 import {
   ENTERED_ORDER,
   nextSort,
   pointRemark,
+  type Sort,
   scheduleColumns,
   sortedPoints,
 } from '#client/features/desk/components/schedule-rows.ts';
 import { scheduleTsv } from '#client/features/desk/components/schedule-text.ts';
+import { readNet } from '#shared/compute/read-net.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
+import { documentWith } from '#tests/support/desk/desk-fixture.ts';
 
 const SI = { unitSystem: 'SI', datum: 'LD' } as const;
 
@@ -84,7 +90,11 @@ describe('the schedule', () => {
   });
 
   it('copies as numbers a spreadsheet reads, and never as a formula', () => {
-    const tsv = scheduleTsv(SI, [point('=1+1'), point('P2', { status: 'withheld', dropsLost: null })]);
+    const tsv = scheduleTsv(
+      SI,
+      [point('=1+1'), point('P2', { status: 'withheld', dropsLost: null })],
+      ENTERED_ORDER,
+    );
     const rows = tsv.split('\n').map((row) => row.split('\t'));
     expect(rows[1]).toEqual([
       "'=1+1",
@@ -100,6 +110,33 @@ describe('the schedule', () => {
     ]);
     expect(rows[2]?.[3]).toBe('');
     expect(new Set(rows.map((row) => row.length))).toEqual(new Set([10]));
+  });
+
+  it('is copied in the order it is shown in', () => {
+    const points = [
+      point('P10', { order: 1, totalHead: 101 }),
+      point('P2', { order: 2, totalHead: 103 }),
+      point('P1', { order: 3, totalHead: 102 }),
+    ];
+    const document = documentWith({});
+    const reading = { ...readNet(document), points };
+    const orders: Sort[] = [ENTERED_ORDER, { column: 'totalHead', descending: true }];
+    const copied = orders.map((sort) =>
+      scheduleTsv(SI, points, sort)
+        .split('\n')
+        .slice(1)
+        .map((row) => row.split('\t')[0]),
+    );
+    const shown = orders.map((sort) => {
+      const nothing = { onSort: () => {}, onEdit: null, selectedIds: [], onSelect: null };
+      const html = renderToStaticMarkup(createElement(Schedule, { document, reading, sort, ...nothing }));
+      return [...html.matchAll(/>(P\d+)</g)].map((match) => match[1]);
+    });
+    expect(copied).toEqual([
+      ['P10', 'P2', 'P1'],
+      ['P2', 'P1', 'P10'],
+    ]);
+    expect(shown).toEqual(copied);
   });
 
   it('makes a clicked point a typed one when a coordinate is typed, the other kept as read', () => {
