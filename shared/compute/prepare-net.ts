@@ -16,6 +16,7 @@ import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, placePoint, type ReadingGround } from '#shared/compute/net/read-point.ts';
 import { questionSoils } from '#shared/compute/net/soil-boundaries.ts';
+import { solidBodies } from '#shared/compute/net/solid-bodies.ts';
 import { questionUpstream } from '#shared/compute/net/upstream-side.ts';
 import { checkWaterline } from '#shared/compute/net/waterline.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
@@ -132,6 +133,7 @@ function groundOf(
     strips: model.strips,
     heads,
     walls: model.walls.map((wall) => wall.shape),
+    bodies: solidBodies(shapes('impervious'), shapes('equipotential'), model.reach),
     phreaticLines: shapes('phreaticLine'),
     faces: shapes('ground', 'submergedFace', 'outflowFace'),
     freeFaces: model.potentials

@@ -1,5 +1,6 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
+import { distanceToRing, type Ring, ringContains } from '#shared/compute/geometry/polygon.ts';
 import { nearestOnPolyline, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
 import { liesAbovePhreatic } from '#shared/compute/net/above-phreatic.ts';
 import { type HandReading, readByHand, straddlesWall, stripAt } from '#shared/compute/net/hand-rule.ts';
@@ -17,6 +18,8 @@ export type ReadingGround = {
   readonly strips: readonly Strip[];
   readonly heads: NetHeads;
   readonly walls: readonly Polyline[];
+  /** Closed impervious outlines inside which nothing flows. */
+  readonly bodies: readonly Ring[];
   readonly phreaticLines: readonly Polyline[];
   /** Faces and ground that bound the section from above. */
   readonly faces: readonly Polyline[];
@@ -96,6 +99,13 @@ export function readPoint(point: PlacedPoint, ground: ReadingGround): PointReadi
   if (liesAbovePhreatic(sheetAt, ground.map.up, ground.phreaticLines, ground.faces, ground.slack)) {
     return abovePhreatic(point);
   }
+  if (isInsideBody(sheetAt, ground)) {
+    return withholdPoint(
+      point,
+      'acrossWall',
+      'The point lies inside an impervious body. No water flows there, and nothing is read.',
+    );
+  }
   const strip = stripAt(ground.strips, sheetAt, ground.slack);
   if (strip === null) {
     return withholdPoint(
@@ -122,6 +132,11 @@ export function readPoint(point: PlacedPoint, ground: ReadingGround): PointReadi
     );
   }
   return withFigures(point, sheetAt, elevation, ground, hand, before, after);
+}
+
+/** A point on the outline itself, to the accuracy of tracing, is read from outside: there the water presses. */
+function isInsideBody([x, y]: SheetPx, { bodies, slack }: ReadingGround): boolean {
+  return bodies.some((body) => ringContains(body, x, y) && distanceToRing(body, x, y) > slack);
 }
 
 function withFigures(
