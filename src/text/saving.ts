@@ -1,3 +1,5 @@
+import { problemText } from './problems.ts';
+
 /** Words about saving. */
 export const savingText = {
   saved: (time: string) => `Saved ${time}`,
@@ -11,7 +13,8 @@ export const savingText = {
   otherPerson: 'Not saved: somebody else is signed in here. Sign in as yourself again; the work is kept.',
   forbidden: 'Not saved: you may no longer change this net. The work is kept in this browser.',
   tryAgain: 'Try again',
-  refused: (label: string, reason: string) => `Not accepted: ${label}. ${reason}`,
+  refused: (label: string, reason: string, requestId: string) =>
+    `Not accepted: ${label}. ${reason}${requestId ? ` ${problemText.requestNumber} ${requestId}` : ''}`,
   forget: 'Leave it out',
   conflict: (count: number, name: string | null, what: string) =>
     `${count === 1 ? `1 ${what} was` : `${count} things were`} changed by ${name ?? 'somebody else'} meanwhile`,

@@ -54,7 +54,7 @@ function sentenceOf(state: SaveState, store: DeskStore, conflictId: string | und
     case 'saving':
       return text.saving;
     case 'refused':
-      return text.refused(state.label, state.reason);
+      return text.refused(state.label, state.reason, state.requestId);
     case 'conflict': {
       const name = state.changedBy === null ? null : shortName(state.changedBy);
       return text.conflict(state.count, name, thingOf(store, conflictId));

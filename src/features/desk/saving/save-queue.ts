@@ -4,6 +4,7 @@ import type { PersonRef } from '#shared/contract/common.ts';
 import type { DocumentEntity, VersionedEntity } from '#shared/contract/document.ts';
 import { MAX_OPS_PER_BATCH } from '#shared/contract/limits.ts';
 import type { CommandBatch, CommandResult, NetOp, OpOutcome } from '#shared/contract/nets.ts';
+import type { Refusal } from './save-state.ts';
 
 /**
  * What is not yet on the server, as pure state. Batches leave in order and one at a time, so that the base version
@@ -32,11 +33,10 @@ export interface SaveConflict {
 }
 
 /** A batch the server will never take, set aside so that the work behind it goes on. */
-export interface RefusedBatch {
+export interface RefusedBatch extends Refusal {
   seq: number;
   label: string;
   ops: NetOp[];
-  reason: string;
 }
 
 export interface SaveQueue {
@@ -163,7 +163,7 @@ export function settled(queue: SaveQueue, entityId: string): SaveQueue {
 }
 
 /** Sets the first batch aside because the server will never take it, and what only made sense after it. */
-export function setAside(queue: SaveQueue, reason: string): SaveQueue {
+export function setAside(queue: SaveQueue, { reason, requestId }: Refusal): SaveQueue {
   const [first, ...rest] = queue.batches;
   if (!first) return queue;
   const { seq, label, ops } = first;
@@ -174,7 +174,7 @@ export function setAside(queue: SaveQueue, reason: string): SaveQueue {
       ops: batch.ops.filter((op) => op.op === 'put' || op.baseVersion > 0),
     }))
     .filter((batch) => batch.ops.length > 0);
-  return { ...queue, batches, refused: [...queue.refused, { seq, label, ops, reason }] };
+  return { ...queue, batches, refused: [...queue.refused, { seq, label, ops, reason, requestId }] };
 }
 
 /** Forgets what was refused, once the person has read why. */

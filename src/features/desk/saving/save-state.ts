@@ -1,12 +1,19 @@
 /** Why sending stopped. `offline` and `server` are tried again by themselves, the others wait for the person. */
 export type SendFailure = 'offline' | 'server' | 'signedOut' | 'otherPerson' | 'forbidden';
 
+/** Why the server will never take something, and the number under which its log has that. */
+export interface Refusal {
+  reason: string;
+  /** Empty when the answer bore none. */
+  requestId: string;
+}
+
 /** What the desk shows about saving; the words are in `text/saving.ts`. */
 export type SaveState =
   | { kind: 'saved'; at: number | null }
   | { kind: 'saving' }
   | { kind: 'waiting'; failure: SendFailure; kept: boolean }
-  | { kind: 'refused'; label: string; reason: string }
+  | ({ kind: 'refused'; label: string } & Refusal)
   | { kind: 'conflict'; count: number; changedBy: string | null };
 
 export interface SaveFacts {
@@ -16,7 +23,7 @@ export interface SaveFacts {
   kept: boolean;
   savedAt: number | null;
   conflicts: ReadonlyArray<{ changedBy: { name: string } | null }>;
-  refused: ReadonlyArray<{ label: string; reason: string }>;
+  refused: ReadonlyArray<{ label: string } & Refusal>;
 }
 
 /** The one state to show: what needs the person comes before what settles by itself. */
@@ -24,7 +31,10 @@ export function saveStateOf(facts: SaveFacts): SaveState {
   const { conflicts, refused, failure, kept } = facts;
   const [firstRefused] = refused;
   if (failure === 'signedOut' || failure === 'otherPerson') return { kind: 'waiting', failure, kept };
-  if (firstRefused) return { kind: 'refused', label: firstRefused.label, reason: firstRefused.reason };
+  if (firstRefused) {
+    const { label, reason, requestId } = firstRefused;
+    return { kind: 'refused', label, reason, requestId };
+  }
   if (conflicts.length > 0) {
     return { kind: 'conflict', count: conflicts.length, changedBy: conflicts[0]?.changedBy?.name ?? null };
   }

@@ -119,7 +119,7 @@ export function startSaving(deps: SavingDeps): Saving {
     if (outcome.kind === 'failed') return failed(outcome.failure, outcome.detail);
     failures = 0;
     state.setState({ failure: null, detail: '' });
-    if (outcome.kind === 'refused') change(setAside(queue, outcome.reason));
+    if (outcome.kind === 'refused') change(setAside(queue, outcome));
     else takeAnswer(taken.batch.seq, outcome.result);
     return true;
   }

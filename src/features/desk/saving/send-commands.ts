@@ -2,7 +2,7 @@ import { ApiProblem } from '#client/lib/api-problem.ts';
 import { sendJson } from '#client/lib/http.ts';
 import { currentPersonId } from '#client/lib/sign-in-state.ts';
 import { type CommandBatch, type CommandResult, commandResult } from '#shared/contract/nets.ts';
-import type { SendFailure } from './save-state.ts';
+import type { Refusal, SendFailure } from './save-state.ts';
 
 /** A connection that answers nothing for this long is taken for lost; the repeat is recognised by its number. */
 const ANSWER_WITHIN_MS = 20_000;
@@ -11,7 +11,7 @@ const ANSWER_WITHIN_MS = 20_000;
 export type SendOutcome =
   | { kind: 'answered'; result: CommandResult }
   | { kind: 'failed'; failure: SendFailure; detail: string }
-  | { kind: 'refused'; reason: string };
+  | ({ kind: 'refused' } & Refusal);
 
 export type SendBatch = (batch: CommandBatch) => Promise<SendOutcome>;
 
@@ -35,9 +35,10 @@ export function batchSender(netId: string, personId: string): SendBatch {
   };
 }
 
-function outcomeOf(error: unknown): SendOutcome {
+/** What a failed sending means for the batch. */
+export function outcomeOf(error: unknown): SendOutcome {
   if (!(error instanceof ApiProblem)) return { kind: 'failed', failure: 'offline', detail: '' };
-  const { detail } = error.problem;
+  const { detail, requestId } = error.problem;
   if (error.isNoConnection) return { kind: 'failed', failure: 'offline', detail };
   switch (error.code) {
     case 'not-signed-in':
@@ -49,7 +50,7 @@ function outcomeOf(error: unknown): SendOutcome {
       return { kind: 'failed', failure: 'forbidden', detail };
     case 'invalid-input':
     case 'too-large':
-      return { kind: 'refused', reason: detail };
+      return { kind: 'refused', reason: detail, requestId };
     default:
       return { kind: 'failed', failure: 'server', detail };
   }

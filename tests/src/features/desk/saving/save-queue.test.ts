@@ -137,9 +137,9 @@ describe('a batch the server will never take', () => {
   it('is set aside with the reason, and the work behind it goes on', () => {
     const tried = sent(queued(put(LINE_A, lineTo(1), 0)));
     const more = [remove(LINE_A, 0), put(LINE_B, lineTo(5), 1)].reduce(enqueue, tried);
-    const queue = setAside(more, 'The line has too many points.');
+    const queue = setAside(more, { reason: 'The line has too many points.', requestId: 'r-1' });
     expect(queue.refused).toMatchObject([
-      { label: 'moved a vertex', reason: 'The line has too many points.' },
+      { label: 'moved a vertex', reason: 'The line has too many points.', requestId: 'r-1' },
     ]);
     expect(queue.batches.flatMap((batch) => batch.ops.map((op) => op.entityId))).toEqual([LINE_B]);
   });

@@ -32,7 +32,7 @@ describe('the state of saving', () => {
     const all = facts({
       unsent: 1,
       failure: 'signedOut',
-      refused: [{ label: 'drew a line', reason: 'Too long.' }],
+      refused: [{ label: 'drew a line', reason: 'Too long.', requestId: 'r-1' }],
       conflicts: [{ changedBy: { name: 'Remi Okafor' } }],
     });
     expect(saveStateOf(all).kind).toBe('waiting');

@@ -181,7 +181,9 @@ describe('saving', () => {
   it('goes on after a change the server will never take, and says which it was', async () => {
     const server = serverHolding({ [LINE_A]: lineTo(1) });
     const { desk, saving } = await open({ [LINE_A]: lineTo(1) }, async (batch) =>
-      batch.seq === 1 ? { kind: 'refused', reason: 'Too many points.' } : server.answer(batch),
+      batch.seq === 1
+        ? { kind: 'refused', reason: 'Too many points.', requestId: 'r-1' }
+        : server.answer(batch),
     );
     desk.run('drew a line', [{ op: 'put', entityId: LINE_A, value: lineTo(2) }]);
     desk.run('moved a vertex', [{ op: 'put', entityId: LINE_A, value: lineTo(3) }]);
@@ -190,6 +192,7 @@ describe('saving', () => {
       kind: 'refused',
       label: 'drew a line',
       reason: 'Too many points.',
+      requestId: 'r-1',
     });
     expect(server.held.get(LINE_A)?.value).toEqual(lineTo(3));
   });
