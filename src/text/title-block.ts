@@ -41,9 +41,9 @@ export const titleBlockText = {
   alongIt: 'empty, its own elevation',
   dropsNeeded: 'Needed',
   dropsTraced: (count: string) => `${count} traced`,
-  /** Where the lines make the count that is stated, something else of the net is unfinished. */
+  /** The other cells say that the net is unfinished; here only a count that differs is worth a word. */
   dropsStated: (stated: string, traced: string | null) =>
-    `${stated} stated, ${traced === null || traced === stated ? 'net unfinished' : `${traced} traced`}`,
+    traced === null || traced === stated ? `${stated} stated` : `${stated} stated, ${traced} traced`,
   channelsNone: 'None',
   unequal: 'Unequal intervals',
   notYet: 'Net unfinished',

@@ -2,6 +2,7 @@ import { classNames } from '#client/components/class-names.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
+import { unitNames } from '#shared/text/unit-text.ts';
 import { type Edit, renamePoint, typePlace } from './schedule-edits.ts';
 import { pointFigures, pointRemark } from './schedule-rows.ts';
 import { TableNumber, TableText } from './table-inputs.tsx';
@@ -49,6 +50,7 @@ export function ScheduleRow({
         )}
       >
         <NameCell point={point} document={document} onEdit={onEdit} />
+        <PressureOnPhone point={point} document={document} />
       </th>
       <PlaceCells point={point} document={document} onEdit={onEdit} name={name} />
       <FigureCells point={point} document={document} unfinished={unfinished} />
@@ -64,6 +66,18 @@ export function ScheduleRow({
         </button>
       </td>
     </tr>
+  );
+}
+
+/** On a phone the last column lies off the screen, so the figure that is wanted stands under the name as well. */
+function PressureOnPhone({ point, document }: Pick<RowProps, 'point' | 'document'>) {
+  if (point.porePressure === null) return null;
+  const { porePressure, porePressurePlusMinus } = pointFigures(point, document);
+  return (
+    <span aria-hidden="true" className="hidden text-sm font-normal whitespace-nowrap max-sm:block">
+      {porePressure}
+      {porePressurePlusMinus} {unitNames(document.unitSystem).pressure}
+    </span>
   );
 }
 

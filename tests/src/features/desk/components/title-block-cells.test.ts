@@ -72,7 +72,7 @@ describe('the title block', () => {
       return `${plain(cell?.value ?? [])} [${cell?.state}]`;
     };
     expect(drops(undefined, 10)).toBe('10 [ok]');
-    expect(drops(first('drain'), 10)).toBe('10 stated, net unfinished [missing]');
+    expect(drops(first('drain'), 10)).toBe('10 stated [missing]');
     expect(drops(first('equipotential'), 10)).toBe('10 stated, 9 traced [missing]');
     expect(drops(undefined, null)).toBe('10 traced [missing]');
     expect(drops(first('drain'), null)).toBe('Needed [missing]');
