@@ -11,9 +11,7 @@ interface TableProps {
 /** A ruled table that scrolls sideways inside its own frame on a narrow screen, or is stacked there. */
 export function Table({ caption, stacked = false, children }: TableProps) {
   return (
-    // A region that scrolls must be reachable by keyboard.
-    // biome-ignore lint/a11y/noNoninteractiveTabindex: the scrolling frame has no other way in for the keyboard
-    <section aria-label={caption} tabIndex={0} className="overflow-x-auto">
+    <section aria-label={caption} className="overflow-x-auto">
       <table className={classNames('w-full', stacked && STACKED)}>
         <caption className="sr-only">{caption}</caption>
         {children}

@@ -8,7 +8,7 @@ export interface PlacedKnownPoint {
   elevation: string;
 }
 
-export const titleBlock = (page: Page): Locator => page.getByRole('group', { name: 'Title block' });
+export const titleBlock = (page: Page): Locator => page.getByRole('region', { name: 'Title block' });
 
 /** A cell of the title block, by the fact it shows. */
 export const cell = (page: Page, name: string): Locator =>

@@ -1,15 +1,12 @@
+import { createElement, Fragment } from 'react';
+
 /** A piece of a figure: plain text, or a power raised by markup. */
 export type Run = string | { readonly sup: string };
 
-/** A figure with its powers raised. */
+/** A figure with its powers raised. The pieces are given as separate children: they never move, so need no keys. */
 export function Runs({ runs }: { runs: readonly Run[] }) {
-  return runs.map((run, index) =>
-    typeof run === 'string' ? (
-      // biome-ignore lint/suspicious/noArrayIndexKey: the pieces of one figure never move
-      <span key={index}>{run}</span>
-    ) : (
-      // biome-ignore lint/suspicious/noArrayIndexKey: the pieces of one figure never move
-      <sup key={index}>{run.sup}</sup>
-    ),
+  const pieces = runs.map((run) =>
+    typeof run === 'string' ? createElement('span', null, run) : createElement('sup', null, run.sup),
   );
+  return createElement(Fragment, null, ...pieces);
 }

@@ -38,9 +38,7 @@ interface TitleBlockProps {
  */
 export function TitleBlock({ cells, stale, open, onStep }: TitleBlockProps) {
   return (
-    // biome-ignore lint/a11y/useSemanticElements: a title block is no set of form fields
-    <div
-      role="group"
+    <section
       aria-label={text.name}
       aria-busy={stale}
       className="grid shrink-0 grid-cols-8 gap-px border-t-[1.5px] border-ink bg-ink"
@@ -48,7 +46,7 @@ export function TitleBlock({ cells, stale, open, onStep }: TitleBlockProps) {
       {cells.map((cell) => (
         <Cell key={cell.id} cell={cell} open={open === cell.id} onStep={onStep} />
       ))}
-    </div>
+    </section>
   );
 }
 

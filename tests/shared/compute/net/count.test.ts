@@ -40,7 +40,7 @@ describe('counting drops', () => {
 
   it('gives the rises of the worked nets (published checks 8-01 Das, 8-06 Craig)', () => {
     const das = countDrops(untyped(5), 5.6, 2.2, 6);
-    // The book's transcription mixes 5.6 and 5.61; its tolerance covers both.
+    // The printed example mixes 5.6 and 5.61; its tolerance covers both.
     expect(Math.abs(das.lines[0]!.head - PUBLISHED['8-01'].rise_a)).toBeLessThan(0.012);
     expect(Math.abs(das.lines[4]!.head - PUBLISHED['8-01'].rise_b)).toBeLessThan(0.012);
     const craig = countDrops(untyped(11), 4, 0, 12);
