@@ -4,7 +4,6 @@ import { useParams } from 'react-router-dom';
 import { ButtonLink } from '#client/components/button.tsx';
 import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
-import { NotesList } from '#client/features/notes/components/notes-list.tsx';
 import { revisionListQuery, revisionQuery } from '#client/features/revisions/api/revision-queries.ts';
 import { DecisionPanel } from '#client/features/revisions/components/decision-panel.tsx';
 import { RecordFacts } from '#client/features/revisions/components/record-facts.tsx';
@@ -17,6 +16,7 @@ import { checkText as text } from '#client/text/revisions.ts';
 import type { RevisionDto } from '#shared/contract/revisions.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { AppFrame } from '../app-frame.tsx';
+import { NetNotes } from '../desk/net-notes.tsx';
 import { CheckGrid, type CheckPane } from './check-grid.tsx';
 import { FrozenSchedule } from './frozen-schedule.tsx';
 import { FrozenTitleBlock } from './frozen-title-block.tsx';
@@ -74,22 +74,11 @@ function Check({ revision }: { revision: RevisionDto }) {
           }
           schedule={<FrozenSchedule payload={payload} store={store} />}
           notes={
-            <NotesList
+            <NetNotes
               netId={payload.netId}
-              notes={notes.notes}
-              error={notes.error}
-              targetOf={notes.targetOf}
+              notes={notes}
               canWrite={revision.can.includes('note.write')}
-              chosenId={notes.chosenId}
-              onChoose={(note) => {
-                notes.choose(note);
-                setPane('sheet');
-              }}
-              writingAt={notes.writingAt}
-              onWritten={(note) => {
-                notes.setWritingAt(null);
-                if (note) notes.setChosenId(note.id);
-              }}
+              onSheet={() => setPane('sheet')}
             />
           }
           block={<FrozenTitleBlock revision={revision} />}

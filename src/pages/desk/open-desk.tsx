@@ -14,7 +14,6 @@ import { StoreNotice } from '#client/features/desk/components/store-notice.tsx';
 import { ToolPalette } from '#client/features/desk/components/tool-palette.tsx';
 import { useSavingMoments } from '#client/features/desk/components/use-saving-moments.ts';
 import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
-import { NotesList } from '#client/features/notes/components/notes-list.tsx';
 import { downloadFrom } from '#client/lib/download.ts';
 import { apiUrl } from '#client/lib/http.ts';
 import { paths } from '#client/lib/paths.ts';
@@ -27,6 +26,7 @@ import { sectionLabel } from '#shared/text/section-title.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { DeskGrid } from './desk-grid.tsx';
 import { DeskTitleBlock } from './desk-title-block.tsx';
+import { NetNotes } from './net-notes.tsx';
 import { RevisionsPane } from './revisions-pane.tsx';
 import { SendForChecking } from './send-for-checking.tsx';
 import { useDeskLive } from './use-desk-live.ts';
@@ -146,22 +146,11 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             ) : margin.shows === 'revisions' ? (
               <RevisionsPane netId={netId} onClose={closeForm} />
             ) : (
-              <NotesList
+              <NetNotes
                 netId={netId}
-                notes={notes.notes}
-                error={notes.error}
-                targetOf={notes.targetOf}
+                notes={notes}
                 canWrite={detail.can.includes('note.write')}
-                chosenId={notes.chosenId}
-                onChoose={(note) => {
-                  notes.choose(note);
-                  setPane('sheet');
-                }}
-                writingAt={notes.writingAt}
-                onWritten={(note) => {
-                  notes.setWritingAt(null);
-                  if (note) notes.setChosenId(note.id);
-                }}
+                onSheet={() => setPane('sheet')}
               />
             )
           }
