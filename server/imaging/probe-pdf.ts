@@ -1,11 +1,13 @@
 import type { PDFDocumentProxy } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import { MAX_PAGES } from '#shared/contract/limits.ts';
 import { openPage, withPdf } from './pdf-document.ts';
+import { hasPdfEnd } from './pdf-end.ts';
 import { RenderRefusal, refusals } from './refusal.ts';
 import type { ProbedPage } from './render-types.ts';
 
-/** The pages of a PDF; one of which no page can be drawn is refused whole. @throws RenderRefusal */
+/** The pages of a PDF; one that is cut off, or of which no page can be drawn, is refused whole. @throws RenderRefusal */
 export async function probePdf(file: string): Promise<ProbedPage[]> {
+  if (!(await hasPdfEnd(file))) throw refusals.pdfCutOff();
   return withPdf(file, async (document) => {
     if (document.numPages < 1) throw refusals.noPages();
     if (document.numPages > MAX_PAGES) throw refusals.tooManyPages(document.numPages, MAX_PAGES);

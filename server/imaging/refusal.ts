@@ -41,6 +41,11 @@ export const refusals = {
       'The PDF is damaged and cannot be read. Copy it again from its source, or print it to a new PDF.',
       { cause },
     ),
+  pdfCutOff: () =>
+    new RenderRefusal(
+      'damaged',
+      'The PDF is damaged: its end is missing, so pages or lines may be lost. Copy it again from its source.',
+    ),
   damagedPage: (cause?: unknown) =>
     new RenderRefusal(
       'damaged',

@@ -47,10 +47,6 @@ const OWN_ANSWER: Record<string, { outcome: string; because: string }> = {
     because:
       '280 megapixels are below the 600 that are shown; it is decoded in strips within the memory limit',
   },
-  'hostile/issue9105_other.pdf': {
-    outcome: 'accepted, 1 page',
-    because: 'pdf.js rebuilds the missing trailer and draws the page’s text whole',
-  },
   'hostile/issue19484_1.pdf': {
     outcome: 'accepted, 1 page',
     because: 'pdf.js decrypts it with the empty password and draws the whole page of text',
