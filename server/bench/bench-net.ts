@@ -7,6 +7,7 @@ import {
   type SheetPoint,
   SINGLE_KINDS,
   singleOf,
+  UNSAID,
 } from '#shared/contract/document.ts';
 import type { NetDetailDto, NetOp } from '#shared/contract/nets.ts';
 import { A1_PX } from './a1-sheet.ts';
@@ -49,6 +50,7 @@ function knownPoints(): Array<EntityOf<'knownPoint'>> {
 const lines = (): Array<EntityOf<'line'>> =>
   NET.lines.map((line) => ({
     kind: 'line',
+    origin: 'traced',
     line: line.line,
     name: '',
     points: Array.from({ length: VERTICES }, (_, index) => toSheet(line.at(index / (VERTICES - 1)))),
@@ -61,6 +63,7 @@ const lines = (): Array<EntityOf<'line'>> =>
 const readingPoints = (): Array<EntityOf<'readingPoint'>> =>
   Array.from({ length: READINGS }, (_, index) => ({
     kind: 'readingPoint',
+    ...UNSAID.readingPoint,
     name: `P${index + 1}`,
     place: { on: 'sheet', at: toSheet(NET.placeAt(1.5 + (index * 34) / READINGS, 2.5 + (index % 12))) },
     order: index,
@@ -69,14 +72,16 @@ const readingPoints = (): Array<EntityOf<'readingPoint'>> =>
 const singles = (): DocumentEntity[] => [
   {
     kind: 'waterLevels',
+    ...UNSAID.waterLevels,
     headwater: NET.headwater,
     tailwater: NET.tailwater,
     gammaW: 9.81,
     source: '',
   },
-  { kind: 'permeability', k: 2e-6, unit: 'm/s', factor: null, source: '' },
+  { kind: 'permeability', ...UNSAID.soil, k: 2e-6, unit: 'm/s', factor: null, source: '' },
   {
     kind: 'netCount',
+    countedIn: null,
     drops: NET.drops,
     channels: null,
     cellRatio: 1,

@@ -1,4 +1,4 @@
-import type { DocumentEntity, LineKind, SheetPoint } from '#shared/contract/document.ts';
+import { type DocumentEntity, type LineKind, type SheetPoint, UNSAID } from '#shared/contract/document.ts';
 import {
   BASE,
   equipotentialAt,
@@ -37,7 +37,17 @@ function line(
   water: 'headwater' | 'tailwater' | null = null,
 ): DocumentEntity {
   const points = places.map((place) => onSheet(frame, place));
-  return { kind: 'line', line: kind, name, points, finished: true, water, head: null, drops: null };
+  return {
+    kind: 'line',
+    origin: 'traced',
+    line: kind,
+    name,
+    points,
+    finished: true,
+    water,
+    head: null,
+    drops: null,
+  };
 }
 
 function knownPoint(frame: SheetFrame, name: string, place: Place, use: 'fit' | 'check'): DocumentEntity {
@@ -46,6 +56,7 @@ function knownPoint(frame: SheetFrame, name: string, place: Place, use: 'fit' | 
 
 const readingPoint = (name: string, order: number, [offset, elevation]: Place): DocumentEntity => ({
   kind: 'readingPoint',
+  ...UNSAID.readingPoint,
   name,
   place: { on: 'section', offset, elevation },
   order,

@@ -9,6 +9,7 @@ import { ApplicationRole1796126400008 } from './1796126400008-application-role.t
 import { NetCopiedFrom1796126400009 } from './1796126400009-net-copied-from.ts';
 import { RevisionChangeNumber1796126400010 } from './1796126400010-revision-change-number.ts';
 import { SignInFailures1796126400011 } from './1796126400011-sign-in-failures.ts';
+import { DocumentVersion21796126400013 } from './1796126400013-document-version-2.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -23,4 +24,5 @@ export const migrations = [
   NetCopiedFrom1796126400009,
   RevisionChangeNumber1796126400010,
   SignInFailures1796126400011,
+  DocumentVersion21796126400013,
 ];

@@ -8,6 +8,7 @@ import {
 } from 'jsonc-parser';
 import * as z from 'zod/mini';
 import { type FlowNetDocument, flowNetDocument } from '#shared/contract/document.ts';
+import { upgradeDocument } from '#shared/contract/document-versions.ts';
 
 /** A fault of a net file: the line it is on, the field as a path, and what is the matter. */
 export type NetFileFault = { readonly line: number; readonly field: string; readonly message: string };
@@ -33,7 +34,9 @@ export function parseNetFile(source: string): NetFile {
       ],
     };
   }
-  const result = flowNetDocument.safeParse(JSON.parse(text), { error: z.locales.en().localeError });
+  const result = flowNetDocument.safeParse(upgradeDocument(JSON.parse(text)), {
+    error: z.locales.en().localeError,
+  });
   if (result.success) return { document: result.data };
   return {
     faults: result.error.issues.map((issue) => ({

@@ -1,6 +1,6 @@
 import { v7 as uuidv7 } from 'uuid';
 import type { DocumentEntityRow } from '#server/entities/net-entity.ts';
-import type { DocumentEntity, UnitSystem } from '#shared/contract/document.ts';
+import { type DocumentEntity, UNSAID, type UnitSystem } from '#shared/contract/document.ts';
 
 /** Who makes the first entities of a section or a net, and under which change number. */
 export interface Making {
@@ -14,6 +14,7 @@ export function firstSectionEntities(): DocumentEntity[] {
   return [
     {
       kind: 'setOut',
+      scales: 'equal',
       method: 'points',
       distance: null,
       level: 'line',
@@ -28,9 +29,10 @@ export function firstSectionEntities(): DocumentEntity[] {
 /** What a net starts with: water levels, permeability and count, all still to be said. */
 export function firstNetEntities(unitSystem: UnitSystem, gammaW: number): DocumentEntity[] {
   return [
-    { kind: 'waterLevels', headwater: null, tailwater: null, gammaW, source: '' },
+    { kind: 'waterLevels', ...UNSAID.waterLevels, headwater: null, tailwater: null, gammaW, source: '' },
     {
       kind: 'permeability',
+      ...UNSAID.soil,
       k: null,
       unit: unitSystem === 'SI' ? 'm/s' : 'ft/day',
       factor: null,
@@ -38,6 +40,7 @@ export function firstNetEntities(unitSystem: UnitSystem, gammaW: number): Docume
     },
     {
       kind: 'netCount',
+      countedIn: null,
       drops: null,
       channels: null,
       cellRatio: 1,

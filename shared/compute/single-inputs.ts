@@ -1,4 +1,4 @@
-import { type EntityOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
+import { type EntityOf, type FlowNetDocument, singleOf, UNSAID } from '#shared/contract/document.ts';
 
 /** The inputs of which a net has one each. */
 export type SingleInputs = {
@@ -15,6 +15,7 @@ export function singleInputs(document: FlowNetDocument): SingleInputs {
   return {
     water: singleOf(document, 'waterLevels')?.value ?? {
       kind: 'waterLevels',
+      ...UNSAID.waterLevels,
       headwater: null,
       tailwater: null,
       gammaW: CUSTOMARY_GAMMA_W[document.unitSystem],
@@ -22,6 +23,7 @@ export function singleInputs(document: FlowNetDocument): SingleInputs {
     },
     permeability: singleOf(document, 'permeability')?.value ?? {
       kind: 'permeability',
+      ...UNSAID.soil,
       k: null,
       unit: document.unitSystem === 'SI' ? 'm/s' : 'ft/day',
       factor: null,
@@ -29,6 +31,7 @@ export function singleInputs(document: FlowNetDocument): SingleInputs {
     },
     count: singleOf(document, 'netCount')?.value ?? {
       kind: 'netCount',
+      countedIn: null,
       drops: null,
       channels: null,
       cellRatio: 1,

@@ -11,7 +11,7 @@ import { type UnitSystem, unitSystem } from './unit-system.ts';
  * top-left corner, x to the right, y down, pixel centres at + 0.5); elevations, never depths, are stored.
  */
 export const FLOW_NET_FORMAT = 'tracehead/flow-net';
-export const FLOW_NET_VERSION = 1;
+export const FLOW_NET_VERSION = 2;
 
 export const entityId = z.uuid();
 const sheetPx = z.number().check(z.gte(-MAX_SHEET_PX), z.lte(MAX_SHEET_PX));
@@ -25,6 +25,11 @@ export { type UnitSystem, unitSystem };
 const measure = z.number().check(z.gte(-MAX_FIGURE), z.lte(MAX_FIGURE));
 const positive = z.number().check(z.positive(), z.lte(MAX_FIGURE));
 const label = z.string().check(z.maxLength(120));
+const sourceText = z.string().check(z.maxLength(500));
+/** Half of the interval that holds a value with 95 %, in the value's unit; null while nobody has said it. */
+const plusMinus = z._default(z.nullable(z.number().check(z.nonnegative(), z.lte(MAX_FIGURE))), null);
+/** Offset and elevation in the document's length unit. */
+const sectionPoint = z.tuple([measure, measure]);
 
 /** A point whose place in the section is known: `fit` points set the scale, `check` points only show a residual. */
 export const knownPoint = z.object({
@@ -55,6 +60,12 @@ export const setOut = z.object({
   upQuarterTurns: z.nullable(z.union([z.literal(0), z.literal(1), z.literal(2), z.literal(3)])),
   /** Denominator n of the scale 1:n stated on the drawing, to warn when the fit disagrees; null when none is stated. */
   statedScale: z.nullable(measure),
+  /**
+   * What unequal horizontal and vertical scales of the drawing mean. `equal`: one scale. `plottingExaggeration`: the
+   * picture is stretched, the ground is not. `transformedSection`: the section is drawn transformed for its
+   * anisotropy, so that kh/kv = (sx/sz)², s in length per pixel.
+   */
+  scales: z._default(z.enum(['equal', 'plottingExaggeration', 'transformedSection']), 'equal'),
 });
 
 export const lineKind = z.enum([
@@ -74,7 +85,7 @@ export type LineKind = z.infer<typeof lineKind>;
  * A traced polyline. Which fields matter depends on `line`:
  * - `equipotential`: `drops` (typed count of drops lost from the headwater) or `head` (typed elevation of its
  *   head) override the count by order; both null = counted.
- * - `submergedFace`: `water` says whose level it carries.
+ * - `submergedFace`: `water` says whose level it carries; a typed `head` is the level of a water of its own.
  * - `drain`: `head` null = empty, carries its own elevation; a number = under pressure at that head.
  * - `outflowFace`: water comes out freely, the head is the elevation along it.
  */
@@ -88,6 +99,8 @@ export const tracedLine = z.object({
   water: z.nullable(z.enum(['headwater', 'tailwater'])),
   head: z.nullable(measure),
   drops: z.nullable(measure),
+  /** How it came about: traced by hand, a first guess that the engineer has still to adjust, or taken from the computed net. */
+  origin: z._default(z.enum(['traced', 'guessed', 'adopted']), 'traced'),
 });
 export type TracedLine = z.infer<typeof tracedLine>;
 
@@ -100,6 +113,40 @@ export const readingPoint = z.object({
     z.object({ on: z.literal('section'), offset: measure, elevation: measure }),
   ]),
   /** Order in the schedule, ascending. */
+  order: z.number(),
+  /** Accuracy of a typed elevation, document length unit. */
+  elevationPlusMinus: plusMinus,
+  /** What an instrument showed there, to be set beside the net: a head in the length unit, or a pressure in kPa or lb/ft². */
+  measured: z._default(
+    z.nullable(
+      z.object({
+        value: measure,
+        as: z.enum(['totalHead', 'pressureHead', 'porePressure']),
+        plusMinus,
+        /** The day of the reading, as written. */
+        on: z.string().check(z.maxLength(40)),
+      }),
+    ),
+    null,
+  ),
+});
+
+/** A line, a list of places or a grid along which heads and pressures are read one after another. */
+export const profile = z.object({
+  kind: z.literal('profile'),
+  name: label,
+  use: z.enum(['base', 'slipSurface', 'filterBoundary', 'borehole', 'other']),
+  place: z.discriminatedUnion('on', [
+    z.object({ on: z.literal('sheet'), points: z.array(sheetPoint).check(z.maxLength(5000)) }),
+    /** Typed or pasted places, read as they are when `spacing` is null. */
+    z.object({ on: z.literal('section'), points: z.array(sectionPoint).check(z.maxLength(5000)) }),
+    /** An upright rectangle of the section by two opposite corners. */
+    z.object({ on: z.literal('grid'), corners: z.tuple([sectionPoint, sectionPoint]) }),
+  ]),
+  /** Distance between samples, document length unit; null = the points themselves (a grid: a twentieth of its longer side). */
+  spacing: z.nullable(positive),
+  finished: z.boolean(),
+  /** Order in the list of profiles, ascending. */
   order: z.number(),
 });
 
@@ -114,16 +161,45 @@ export const waterLevels = z.object({
   tailwater: z.nullable(measure),
   /** Unit weight of water, kN/m³ (SI) or lb/ft³ (US). */
   gammaW: positive,
-  source: z.string().check(z.maxLength(500)),
+  source: sourceText,
+  headwaterPlusMinus: plusMinus,
+  tailwaterPlusMinus: plusMinus,
+  gammaWPlusMinus: plusMinus,
+  /** An error of the datum, common to levels and typed elevations: it cancels in h − z. */
+  datumPlusMinus: plusMinus,
 });
 
-/** Permeability with the factor (×/÷) within which it is known. One for each net. */
-export const permeability = z.object({
-  kind: z.literal('permeability'),
-  k: z.nullable(z.number().check(z.positive(), z.lte(MAX_PERMEABILITY))),
+const permeabilityFigure = z.nullable(z.number().check(z.positive(), z.lte(MAX_PERMEABILITY)));
+const soilProperty = z._default(z.nullable(positive), null);
+const soilProperties = {
+  /** Permeability along the bedding, kh, and wherever it is one for all directions. */
+  k: permeabilityFigure,
+  /** Permeability across the bedding, kv; null = as along it. */
+  kv: z._default(permeabilityFigure, null),
+  /** Dip of the bedding in degrees, positive where it falls towards growing offsets. */
+  dipDeg: z._default(z.number().check(z.gte(-90), z.lte(90)), 0),
   unit: permeabilityUnit,
+  /** Factor (×/÷) within which k is known. */
   factor: z.nullable(z.number().check(z.minimum(1), z.lte(MAX_FIGURE))),
-  source: z.string().check(z.maxLength(500)),
+  /** Unit weights, kN/m³ (SI) or lb/ft³ (US): saturated, and moist above the phreatic line. */
+  saturatedUnitWeight: soilProperty,
+  moistUnitWeight: soilProperty,
+  /** Specific gravity of the grains Gs and void ratio e, from which the saturated weight follows when it is not given. */
+  specificGravity: soilProperty,
+  voidRatio: soilProperty,
+  source: sourceText,
+};
+
+/** The soil of the section, or of all of it that no `soil` claims. One for each net. */
+export const permeability = z.object({ kind: z.literal('permeability'), ...soilProperties });
+
+/** A soil of its own in the regions, parted by traced soil boundaries, in which its places lie. */
+export const soil = z.object({
+  kind: z.literal('soil'),
+  name: label,
+  /** One place inside each region of this soil. */
+  places: z.array(sheetPoint).check(z.maxLength(50)),
+  ...soilProperties,
 });
 
 /** What the engineer counted on the drawing. One for each net. */
@@ -135,19 +211,42 @@ export const netCount = z.object({
   channels: z.nullable(positive),
   /** Width across the flow over length along it of the cells, B/L; 1 for squares. */
   cellRatio: positive,
-  /** Tracing accuracy on the sheet in pixels, for the provisional ±. */
+  /** The soil in which the channels are counted where the section is layered; null = the soil of the section. */
+  countedIn: z._default(z.nullable(entityId), null),
+  /** Tracing accuracy on the sheet in pixels, for the ± of the readings. */
   tracingAccuracyPx: z.number().check(z.nonnegative(), z.lte(MAX_FIGURE)),
-  /** Accuracy of the known points on the drawing in pixels, for the provisional ±. */
+  /** Accuracy of the known points on the drawing in pixels, for the ± of the readings. */
   knownPointAccuracyPx: z.number().check(z.nonnegative(), z.lte(MAX_FIGURE)),
 });
+
+/** What a new entity leaves unsaid. */
+export const UNSAID = {
+  readingPoint: { elevationPlusMinus: null, measured: null },
+  waterLevels: {
+    headwaterPlusMinus: null,
+    tailwaterPlusMinus: null,
+    gammaWPlusMinus: null,
+    datumPlusMinus: null,
+  },
+  soil: {
+    kv: null,
+    dipDeg: 0,
+    saturatedUnitWeight: null,
+    moistUnitWeight: null,
+    specificGravity: null,
+    voidRatio: null,
+  },
+} as const;
 
 export const documentEntity = z.discriminatedUnion('kind', [
   knownPoint,
   setOut,
   tracedLine,
   readingPoint,
+  profile,
   waterLevels,
   permeability,
+  soil,
   netCount,
 ]);
 export type DocumentEntity = z.infer<typeof documentEntity>;

@@ -37,10 +37,12 @@ export const savingText = {
   things: {
     line: 'line',
     readingPoint: 'reading point',
+    profile: 'profile',
     knownPoint: 'known point',
     setOut: 'set-out of the section',
     waterLevels: 'set of water levels',
     permeability: 'permeability',
+    soil: 'soil',
     netCount: 'count',
   },
   facts: {

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import type { DocumentEntity } from '#shared/contract/document.ts';
+import { type DocumentEntity, UNSAID } from '#shared/contract/document.ts';
 import type { ChangesDto, CommandBatch, CommandResult, NetOp } from '#shared/contract/nets.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { addNet, batchesOf, lineOf, openNet, put } from '#tests/support/net-fixture.ts';
@@ -24,6 +24,7 @@ type Acknowledged = Map<string, DocumentEntity | null>;
 
 const pointAt = (x: number): DocumentEntity => ({
   kind: 'readingPoint',
+  ...UNSAID.readingPoint,
   name: `P${x}`,
   place: { on: 'sheet', at: [x, 1] },
   order: x,

@@ -32,6 +32,7 @@ const positiveTo = (most: number) =>
 const anyNumber = numbersTo(MAX_FIGURE);
 const positive = positiveTo(MAX_FIGURE);
 const place = fc.tuple(numbersTo(MAX_SHEET_PX), numbersTo(MAX_SHEET_PX));
+const plusMinus = fc.oneof(fc.constant(0), positive);
 const maybe = <T>(arbitrary: fc.Arbitrary<T>) => fc.option(arbitrary, { nil: null });
 
 const knownPoint = fc.record({
@@ -52,6 +53,7 @@ const line = fc.record({
   water: maybe(fc.constantFrom('headwater' as const, 'tailwater' as const)),
   head: maybe(anyNumber),
   drops: maybe(anyNumber),
+  origin: fc.constantFrom('traced' as const, 'guessed' as const, 'adopted' as const),
 });
 
 const readingPoint = fc.record({
@@ -62,6 +64,55 @@ const readingPoint = fc.record({
     fc.record({ on: fc.constant('section' as const), offset: anyNumber, elevation: anyNumber }),
   ),
   order: fc.double({ noNaN: true, noDefaultInfinity: true }),
+  elevationPlusMinus: maybe(plusMinus),
+  measured: maybe(
+    fc.record({
+      value: anyNumber,
+      as: fc.constantFrom('totalHead' as const, 'pressureHead' as const, 'porePressure' as const),
+      plusMinus: maybe(plusMinus),
+      on: fc.constant(''),
+    }),
+  ),
+});
+
+const sectionPlace = fc.tuple(anyNumber, anyNumber);
+const profile = fc.record({
+  kind: fc.constant('profile' as const),
+  name: fc.string({ maxLength: 10 }),
+  use: fc.constantFrom(
+    'base' as const,
+    'slipSurface' as const,
+    'filterBoundary' as const,
+    'borehole' as const,
+    'other' as const,
+  ),
+  place: fc.oneof(
+    fc.record({ on: fc.constant('sheet' as const), points: fc.array(place, { maxLength: 6 }) }),
+    fc.record({ on: fc.constant('section' as const), points: fc.array(sectionPlace, { maxLength: 6 }) }),
+    fc.record({ on: fc.constant('grid' as const), corners: fc.tuple(sectionPlace, sectionPlace) }),
+  ),
+  spacing: maybe(positive),
+  finished: fc.boolean(),
+  order: fc.double({ noNaN: true, noDefaultInfinity: true }),
+});
+
+const soilProperties = {
+  k: maybe(positiveTo(MAX_PERMEABILITY)),
+  kv: maybe(positiveTo(MAX_PERMEABILITY)),
+  dipDeg: fc.double({ min: -90, max: 90, noNaN: true }),
+  unit: fc.constantFrom('m/s' as const, 'ft/year' as const),
+  factor: maybe(fc.double({ min: 1, max: 1e6, noNaN: true })),
+  saturatedUnitWeight: maybe(positive),
+  moistUnitWeight: maybe(positive),
+  specificGravity: maybe(positive),
+  voidRatio: maybe(positive),
+  source: fc.constant(''),
+};
+const soil = fc.record({
+  kind: fc.constant('soil' as const),
+  name: fc.string({ maxLength: 10 }),
+  places: fc.array(place, { maxLength: 3 }),
+  ...soilProperties,
 });
 
 const singles: fc.Arbitrary<DocumentEntity>[] = [
@@ -74,6 +125,7 @@ const singles: fc.Arbitrary<DocumentEntity>[] = [
     upstream: maybe(fc.constantFrom('left' as const, 'right' as const)),
     upQuarterTurns: maybe(fc.constantFrom(0 as const, 1 as const, 2 as const, 3 as const)),
     statedScale: maybe(anyNumber),
+    scales: fc.constantFrom('equal' as const, 'plottingExaggeration' as const, 'transformedSection' as const),
   }),
   fc.record({
     kind: fc.constant('waterLevels' as const),
@@ -81,19 +133,18 @@ const singles: fc.Arbitrary<DocumentEntity>[] = [
     tailwater: maybe(anyNumber),
     gammaW: positive,
     source: fc.constant(''),
+    headwaterPlusMinus: maybe(plusMinus),
+    tailwaterPlusMinus: maybe(plusMinus),
+    gammaWPlusMinus: maybe(plusMinus),
+    datumPlusMinus: maybe(plusMinus),
   }),
-  fc.record({
-    kind: fc.constant('permeability' as const),
-    k: maybe(positiveTo(MAX_PERMEABILITY)),
-    unit: fc.constantFrom('m/s' as const, 'ft/year' as const),
-    factor: maybe(fc.double({ min: 1, max: 1e6, noNaN: true })),
-    source: fc.constant(''),
-  }),
+  fc.record({ kind: fc.constant('permeability' as const), ...soilProperties }),
   fc.record({
     kind: fc.constant('netCount' as const),
     drops: maybe(positive),
     channels: maybe(positive),
     cellRatio: positive,
+    countedIn: fc.constant(null),
     tracingAccuracyPx: fc.oneof(fc.constant(0), positive),
     knownPointAccuracyPx: fc.oneof(fc.constant(0), positive),
   }),
@@ -102,7 +153,7 @@ const singles: fc.Arbitrary<DocumentEntity>[] = [
 function documentOf(values: readonly DocumentEntity[], unitSystem: 'SI' | 'US'): FlowNetDocument {
   return {
     format: 'tracehead/flow-net',
-    version: 1,
+    version: 2,
     id: entityIdOf(0xabcd),
     name: '',
     unitSystem,
@@ -117,7 +168,7 @@ function documentOf(values: readonly DocumentEntity[], unitSystem: 'SI' | 'US'):
 /** A document of any entities at all, most of them nonsense together. */
 const nonsense = fc
   .tuple(
-    fc.array(fc.oneof(knownPoint, line, line, line, readingPoint), { maxLength: 25 }),
+    fc.array(fc.oneof(knownPoint, line, line, line, readingPoint, profile, soil), { maxLength: 25 }),
     fc.tuple(...singles),
     fc.constantFrom('SI' as const, 'US' as const),
   )
@@ -127,7 +178,9 @@ const nonsense = fc
 const damaged = fc
   .tuple(
     fc.constantFrom(...EXACT_NETS),
-    fc.array(fc.tuple(fc.nat(200), fc.oneof(knownPoint, line, readingPoint, ...singles)), { maxLength: 3 }),
+    fc.array(fc.tuple(fc.nat(200), fc.oneof(knownPoint, line, readingPoint, profile, soil, ...singles)), {
+      maxLength: 3,
+    }),
     fc.array(readingPoint, { maxLength: 3 }),
   )
   .map(([{ net, pxPerUnit }, swaps, points]) => {

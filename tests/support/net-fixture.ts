@@ -108,6 +108,7 @@ export function lineOf(
 ): EntityOf<'line'> {
   return {
     kind: 'line',
+    origin: 'traced',
     line: 'equipotential',
     name: '',
     points,

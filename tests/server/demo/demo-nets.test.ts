@@ -14,7 +14,12 @@ import {
 } from '#server/demo/spillway-apron.ts';
 import { firstNetEntities, firstSectionEntities } from '#server/services/net-singles.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import type { DocumentEntity, EntityOf, FlowNetDocument } from '#shared/contract/document.ts';
+import {
+  type DocumentEntity,
+  type EntityOf,
+  type FlowNetDocument,
+  UNSAID,
+} from '#shared/contract/document.ts';
 import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
 
 const versioned = (values: Array<readonly [string, DocumentEntity]>) =>
@@ -24,7 +29,7 @@ const versioned = (values: Array<readonly [string, DocumentEntity]>) =>
 function documentOf(demo: DemoNet, frame: SheetFrame, more: DocumentEntity[] = []): FlowNetDocument {
   const fresh: FlowNetDocument = {
     format: 'tracehead/flow-net',
-    version: 1,
+    version: 2,
     id: uuidv7(),
     name: 'demo',
     unitSystem: 'SI',
@@ -52,6 +57,7 @@ function readingsAt(
     const [offset, elevation] = place(drop, 0.02 + random() * 0.96);
     const value: EntityOf<'readingPoint'> = {
       kind: 'readingPoint',
+      ...UNSAID.readingPoint,
       name: `T${index}`,
       order: 100 + index,
       place: { on: 'section', offset, elevation },

@@ -1,7 +1,7 @@
 import { v7 as uuidv7 } from 'uuid';
 import { describe, expect, it } from 'vitest';
 import { faultsOf, type HeldEntity, judgeOps } from '#server/services/command-ops.ts';
-import type { DocumentEntity } from '#shared/contract/document.ts';
+import { type DocumentEntity, UNSAID } from '#shared/contract/document.ts';
 import type { NetOp } from '#shared/contract/nets.ts';
 
 const ME = uuidv7();
@@ -9,6 +9,7 @@ const OTHER = uuidv7();
 
 const point = (name: string): DocumentEntity => ({
   kind: 'readingPoint',
+  ...UNSAID.readingPoint,
   name,
   place: { on: 'sheet', at: [1, 2] },
   order: 1,
@@ -23,6 +24,7 @@ const knownPoint: DocumentEntity = {
 };
 const count: DocumentEntity = {
   kind: 'netCount',
+  countedIn: null,
   drops: 10,
   channels: null,
   cellRatio: 1,

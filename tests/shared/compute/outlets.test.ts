@@ -91,7 +91,7 @@ describe('a drain that the flow does not reach', () => {
     const places = entitiesOf(net, 'readingPoint').map(({ value }) =>
       value.place.on === 'sheet' ? value.place.at : null,
     );
-    const well = { kind: 'line', line: 'drain', name: 'Well 3', finished: true } as const;
+    const well = { kind: 'line', origin: 'traced', line: 'drain', name: 'Well 3', finished: true } as const;
     const points = places.filter((place) => place !== null);
     const reading = readNet(withAdded(net, { ...well, points, water: null, head: null, drops: null }));
     expect(reading.findings.find((found) => found.weight === 'wrong')).toMatchObject({

@@ -25,6 +25,7 @@ function sectionOf(
     })),
     {
       kind: 'setOut' as const,
+      scales: 'equal' as const,
       method: 'points' as const,
       distance: null,
       level: 'line' as const,
@@ -37,7 +38,7 @@ function sectionOf(
   ];
   return {
     format: 'tracehead/flow-net',
-    version: 1,
+    version: 2,
     id: entityIdOf(999),
     name: '',
     unitSystem: rest.unitSystem ?? 'SI',

@@ -1,10 +1,11 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { documentEntity, flowNetDocument, sheetPoint } from '#shared/contract/document.ts';
+import { documentEntity, flowNetDocument, sheetPoint, UNSAID } from '#shared/contract/document.ts';
 import { arbitraryDocument } from '#tests/support/arbitrary-document.ts';
 
 const waterLevels = (headwater: number) => ({
   kind: 'waterLevels',
+  ...UNSAID.waterLevels,
   headwater,
   tailwater: null,
   gammaW: 9.81,

@@ -22,6 +22,7 @@ export const POINT_A = '000000a0-0000-7000-8000-000000000000';
 export function tracedLine(points: Array<[number, number]>, changes: Partial<TracedLine> = {}): TracedLine {
   return {
     kind: 'line',
+    origin: 'traced',
     line: 'equipotential',
     name: '',
     points,
@@ -39,7 +40,7 @@ export function documentWith(values: Record<string, DocumentEntity>): FlowNetDoc
   for (const [id, value] of Object.entries(values)) entities[id] = { id, version: 1, value };
   return {
     format: 'tracehead/flow-net',
-    version: 1,
+    version: 2,
     id: '00000000-0000-7000-8000-00000000d0c0',
     name: 'Full supply level',
     unitSystem: 'SI',

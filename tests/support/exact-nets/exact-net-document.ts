@@ -1,11 +1,12 @@
 import type { ExactNet, ExactPlace } from '#shared/compute/exact/exact-net.ts';
 import { type Similarity, similarityBackward } from '#shared/compute/similarity.ts';
-import type {
-  DocumentEntity,
-  EntityOf,
-  FlowNetDocument,
-  SheetPoint,
-  UnitSystem,
+import {
+  type DocumentEntity,
+  type EntityOf,
+  type FlowNetDocument,
+  type SheetPoint,
+  UNSAID,
+  type UnitSystem,
 } from '#shared/contract/document.ts';
 import { seededNoise } from '#tests/support/exact-nets/seeded-noise.ts';
 
@@ -76,6 +77,7 @@ export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetD
     ...net.lines.map(
       (line): EntityOf<'line'> => ({
         kind: 'line',
+        origin: 'traced',
         line: line.line,
         name: '',
         points: evenly(line.at, spacing).map(toSheet).map(trembled),
@@ -86,9 +88,10 @@ export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetD
       }),
     ),
     waterLevels(net, factor, tracing),
-    { kind: 'permeability', k: 2.5e-6, unit: 'm/s', factor: null, source: 'assumed' },
+    { kind: 'permeability', ...UNSAID.soil, k: 2.5e-6, unit: 'm/s', factor: null, source: 'assumed' },
     {
       kind: 'netCount',
+      countedIn: null,
       drops: net.drops,
       channels: null,
       cellRatio: 1,
@@ -98,6 +101,7 @@ export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetD
     ...(tracing.readings ?? []).map(
       ({ at, clicked }, i): EntityOf<'readingPoint'> => ({
         kind: 'readingPoint',
+        ...UNSAID.readingPoint,
         name: `P${i + 1}`,
         place: clicked
           ? { on: 'sheet', at: toSheet(at) }
@@ -108,7 +112,7 @@ export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetD
   ];
   return {
     format: 'tracehead/flow-net',
-    version: 1,
+    version: 2,
     id: entityIdOf(0xfff0),
     name: 'Exact net',
     unitSystem: tracing.unitSystem ?? 'SI',
@@ -147,6 +151,7 @@ function knownPoints(
 function setOutOf(mirrored: boolean): EntityOf<'setOut'> {
   return {
     kind: 'setOut',
+    scales: 'equal',
     method: 'points',
     distance: null,
     level: 'line',
@@ -160,6 +165,7 @@ function setOutOf(mirrored: boolean): EntityOf<'setOut'> {
 function waterLevels(net: ExactNet, factor: number, tracing: Tracing): EntityOf<'waterLevels'> {
   return {
     kind: 'waterLevels',
+    ...UNSAID.waterLevels,
     headwater: net.headwater * factor,
     tailwater: net.tailwater === null ? null : net.tailwater * factor,
     gammaW: tracing.gammaW ?? (tracing.unitSystem === 'US' ? 62.4 : 9.81),

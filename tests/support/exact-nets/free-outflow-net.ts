@@ -1,4 +1,4 @@
-import type { EntityOf, FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import { type EntityOf, type FlowNetDocument, type SheetPoint, UNSAID } from '#shared/contract/document.ts';
 import { changed, withAdded } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
@@ -15,6 +15,7 @@ function line(kind: EntityOf<'line'>['line'], places: readonly Place[], water: '
   const points = places.map(toSheet);
   return {
     kind: 'line',
+    origin: 'traced',
     line: kind,
     name: '',
     points,
@@ -72,6 +73,7 @@ export function freeOutflowNet(places: ReadonlyArray<{ at: Place }>): FlowNetDoc
     ...places.map(
       ({ at }, i): EntityOf<'readingPoint'> => ({
         kind: 'readingPoint',
+        ...UNSAID.readingPoint,
         name: `P${i + 1}`,
         place: { on: 'section', offset: at[0], elevation: at[1] },
         order: i,

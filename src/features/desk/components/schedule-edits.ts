@@ -1,6 +1,6 @@
 import type { LocalOp } from '#client/features/desk/model/document-ops.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
-import type { EntityOf } from '#shared/contract/document.ts';
+import { type EntityOf, UNSAID } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 
 export interface Edit {
@@ -47,6 +47,7 @@ export function addTypedPoint(
   const { name, offset, elevation } = typed;
   const value: ReadingPoint = {
     kind: 'readingPoint',
+    ...UNSAID.readingPoint,
     name,
     order,
     place: { on: 'section', offset, elevation },

@@ -1,6 +1,6 @@
 import { deskToolText as text } from '#client/text/desk-tools.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
-import { type EntityOf, entitiesOf } from '#shared/contract/document.ts';
+import { type EntityOf, entitiesOf, UNSAID } from '#shared/contract/document.ts';
 import type { NoteAnchor } from '#shared/contract/notes.ts';
 import { selectOne } from '../model/selection.ts';
 import { dragTo, grabMark, letGo } from './drag.ts';
@@ -33,6 +33,7 @@ export function readingPointStep(state: ToolState, event: ToolEvent, context: To
     const points = entitiesOf(context.document, 'readingPoint');
     const value: EntityOf<'readingPoint'> = {
       kind: 'readingPoint',
+      ...UNSAID.readingPoint,
       name: freeName('P', points),
       place: { on: 'sheet', at: keptPoint(at) },
       order: 1 + points.reduce((last, point) => Math.max(last, point.value.order), 0),

@@ -67,6 +67,7 @@ function begin(at: SheetPx, keys: Modifiers, context: ToolContext): ToolStep {
   const entityId = context.newId();
   const value: TracedLine = {
     kind: 'line',
+    origin: 'traced',
     line: choice.line,
     name: '',
     points: [keptPoint(nextPlace(at, keys, context))],

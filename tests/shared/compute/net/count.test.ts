@@ -14,6 +14,7 @@ function lines(...typed: Array<{ head?: number; drops?: number }>): NetLine[] {
     ])!,
     value: {
       kind: 'line',
+      origin: 'traced',
       line: 'equipotential',
       name: '',
       points: [

@@ -9,7 +9,12 @@ const REACH_PX = 5;
 
 function traced(id: string, kind: LineKind, points: SheetPoint[]): NetLine {
   const value = { name: '', points, finished: true, water: null, head: null, drops: null };
-  return { id, kind, shape: polylineOf(points)!, value: { kind: 'line', line: kind, ...value } };
+  return {
+    id,
+    kind,
+    shape: polylineOf(points)!,
+    value: { kind: 'line', line: kind, origin: 'traced', ...value },
+  };
 }
 
 const upright = (id: string, kind: LineKind, x = 0) =>

@@ -6,11 +6,18 @@ import {
   METRES_PER_FOOT,
   permeabilityInMetresPerSecond,
 } from '#shared/compute/units.ts';
-import type { EntityOf, PermeabilityUnit } from '#shared/contract/document.ts';
+import { type EntityOf, type PermeabilityUnit, UNSAID } from '#shared/contract/document.ts';
 import { PUBLISHED } from '#tests/support/published-checks.ts';
 
 function permeability(k: number | null, unit: PermeabilityUnit = 'm/s', factor: number | null = null) {
-  return { kind: 'permeability', k, unit, factor, source: '' } satisfies EntityOf<'permeability'>;
+  return {
+    kind: 'permeability',
+    ...UNSAID.soil,
+    k,
+    unit,
+    factor,
+    source: '',
+  } satisfies EntityOf<'permeability'>;
 }
 
 function relative(actual: number, expected: number): number {

@@ -17,6 +17,7 @@ function soilsIn(...boundaries: SheetPoint[][]) {
   const lines = boundaries.map(
     (points): TracedLine => ({
       kind: 'line',
+      origin: 'traced',
       line: 'soilBoundary',
       name: '',
       points,

@@ -1,7 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { readNet } from '#shared/compute/read-net.ts';
 import { similarityBackward } from '#shared/compute/similarity.ts';
-import type { DocumentEntity, FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import {
+  type DocumentEntity,
+  type FlowNetDocument,
+  type SheetPoint,
+  UNSAID,
+} from '#shared/contract/document.ts';
 import { entityIdOf, exactNetDocument, sheetMapOf } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 
@@ -19,6 +24,7 @@ function withEntities(document: FlowNetDocument, values: DocumentEntity[]): Flow
 
 const outline = (points: SheetPoint[]): DocumentEntity => ({
   kind: 'line',
+  origin: 'traced',
   line: 'impervious',
   name: '',
   points,
@@ -30,6 +36,7 @@ const outline = (points: SheetPoint[]): DocumentEntity => ({
 
 const point = (name: string, offset: number, elevation: number): DocumentEntity => ({
   kind: 'readingPoint',
+  ...UNSAID.readingPoint,
   name,
   place: { on: 'section', offset, elevation },
   order: 1,

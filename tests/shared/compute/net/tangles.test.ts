@@ -34,6 +34,7 @@ function withLine(kind: LineKind, points: SheetPoint[], id: string): FlowNetDocu
     version: 1,
     value: {
       kind: 'line',
+      origin: 'traced',
       line: kind,
       name: '',
       points,

@@ -1,10 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import { conflictFacts } from '#client/features/desk/components/conflict-facts.ts';
-import type { DocumentEntity } from '#shared/contract/document.ts';
+import { type DocumentEntity, UNSAID } from '#shared/contract/document.ts';
 import { tracedLine } from '#tests/support/desk/desk-fixture.ts';
 
 const levels = (headwater: number | null): DocumentEntity => ({
   kind: 'waterLevels',
+  ...UNSAID.waterLevels,
   headwater,
   tailwater: null,
   gammaW: 9.81,

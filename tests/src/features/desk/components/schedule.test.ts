@@ -13,7 +13,7 @@ import {
 } from '#client/features/desk/components/schedule-rows.ts';
 import { scheduleTsv } from '#client/features/desk/components/schedule-text.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import type { EntityOf } from '#shared/contract/document.ts';
+import { type EntityOf, UNSAID } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 import { documentWith } from '#tests/support/desk/desk-fixture.ts';
 
@@ -142,6 +142,7 @@ describe('the schedule', () => {
   it('makes a clicked point a typed one when a coordinate is typed, the other kept as read', () => {
     const clicked: EntityOf<'readingPoint'> = {
       kind: 'readingPoint',
+      ...UNSAID.readingPoint,
       name: 'P1',
       order: 1,
       place: { on: 'sheet', at: [10, 20] },

@@ -6,7 +6,7 @@ import {
   titleBlockCells,
 } from '#client/features/desk/components/title-block-cells.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import { type DocumentEntity, entitiesOf } from '#shared/contract/document.ts';
+import { type DocumentEntity, entitiesOf, UNSAID } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { documentWith, LINE_A, tracedLine } from '#tests/support/desk/desk-fixture.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
@@ -22,6 +22,7 @@ const FACTS = {
 const ID = (n: number) => `00000000-0000-7000-8000-0000000001${String(n).padStart(2, '0')}`;
 const water = (headwater: number | null, tailwater: number | null = null): DocumentEntity => ({
   kind: 'waterLevels',
+  ...UNSAID.waterLevels,
   headwater,
   tailwater,
   gammaW: 9.81,
@@ -107,6 +108,7 @@ describe('the title block', () => {
     });
     const setOut: DocumentEntity = {
       kind: 'setOut',
+      scales: 'equal',
       method: 'points',
       distance: null,
       level: 'line',
@@ -145,7 +147,7 @@ describe('the title block', () => {
   });
 
   it('shows permeability as it was entered, with the factor it is known within', () => {
-    const k = { kind: 'permeability', k: 2e-7, unit: 'm/s', factor: 3, source: '' } as const;
+    const k = { kind: 'permeability', ...UNSAID.soil, k: 2e-7, unit: 'm/s', factor: 3, source: '' } as const;
     expect(block({ [ID(1)]: k }).cell('permeability')).toBe('Permeability: 2 × 10^−7 m/s, ×/÷ 3 [ok]');
     expect(block({ [ID(1)]: { ...k, k: 0.5, unit: 'ft/day', factor: null } }).cell('permeability')).toBe(
       'Permeability: 0.5 ft/day [ok]',

@@ -8,6 +8,7 @@ import {
   type SceneMark,
   type SceneSink,
 } from '#client/features/desk/render/scene.ts';
+import { UNSAID } from '#shared/contract/document.ts';
 import { documentWith, LINE_A, LINE_B, POINT_A, tracedLine } from '#tests/support/desk/desk-fixture.ts';
 
 const line = tracedLine([
@@ -94,6 +95,7 @@ describe('the scene', () => {
     const document = documentWith({
       [POINT_A]: {
         kind: 'readingPoint',
+        ...UNSAID.readingPoint,
         name: 'P1',
         place: { on: 'section', offset: 1, elevation: 2 },
         order: 1,

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { finelyPlaced, finePlaceOf } from '#client/features/desk/tools/fine-place.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
+import { UNSAID } from '#shared/contract/document.ts';
 import { documentWith, LINE_A, POINT_A, tracedLine } from '#tests/support/desk/desk-fixture.ts';
 
 const document = documentWith({
@@ -10,6 +11,7 @@ const document = documentWith({
   ]),
   [POINT_A]: {
     kind: 'readingPoint',
+    ...UNSAID.readingPoint,
     name: 'P1',
     place: { on: 'section', offset: 1, elevation: 2 },
     order: 1,

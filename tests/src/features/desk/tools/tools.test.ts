@@ -5,7 +5,7 @@ import type { BoundaryKind, ToolId } from '#client/features/desk/model/tool-choi
 import { createToolHost } from '#client/features/desk/tools/tool-host.ts';
 import type { Modifiers } from '#client/features/desk/tools/tool-types.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
-import { type DocumentEntity, entitiesOf } from '#shared/contract/document.ts';
+import { type DocumentEntity, entitiesOf, UNSAID } from '#shared/contract/document.ts';
 import {
   countedIds,
   documentWith,
@@ -329,6 +329,7 @@ describe('choosing and changing', () => {
 describe('known points, reading points and notes', () => {
   const typed: DocumentEntity = {
     kind: 'readingPoint',
+    ...UNSAID.readingPoint,
     name: 'P1',
     place: { on: 'section', offset: 1, elevation: 2 },
     order: 3,

@@ -1,0 +1,23 @@
+import { FLOW_NET_VERSION } from './document.ts';
+
+/** What brings a document of a version, as parsed JSON, to the next one. */
+const UPGRADES: Readonly<Record<number, (document: Record<string, unknown>) => Record<string, unknown>>> = {
+  // Version 2 only adds fields and kinds, and the schema fills what an older document leaves out.
+  1: (document) => document,
+};
+
+/**
+ * Brings parsed JSON that claims an older version of the document to the present one, so that the schema can check it;
+ * anything else comes back as it is, for the schema to refuse.
+ */
+export function upgradeDocument(json: unknown): unknown {
+  if (typeof json !== 'object' || json === null || Array.isArray(json)) return json;
+  let document = json as Record<string, unknown>;
+  for (let version = document.version; typeof version === 'number' && version < FLOW_NET_VERSION; ) {
+    const upgrade = UPGRADES[version];
+    if (upgrade === undefined) return document;
+    version += 1;
+    document = { ...upgrade(document), version };
+  }
+  return document;
+}
