@@ -3,6 +3,8 @@ import canonicalize from 'canonicalize';
 import * as z from 'zod/mini';
 import type { RevisionEntity } from '#server/entities/ledger-entity.ts';
 import { AppError } from '#server/errors/app-error.ts';
+import { upgradeDocument } from '#shared/contract/document-versions.ts';
+import { completeReading } from '#shared/contract/reading-versions.ts';
 import { type RevisionPayload, revisionPayload } from '#shared/contract/revisions.ts';
 
 const sha256 = (text: string) => createHash('sha256').update(text, 'utf8').digest('hex');
@@ -15,23 +17,31 @@ export function freezePayload(payload: RevisionPayload): { text: string; hash: s
 }
 
 /**
- * The payload of a stored revision, after it has been held against its hash, its row and the revision before it.
+ * The payload of a stored revision, after it has been held against its hash, its row and the revision before it. One
+ * frozen by an earlier version of the product is completed for display; its figures stay as they were frozen.
  * @throws AppError internal when anything differs; a damaged record is never shown as a good one
  */
 export function openPayload(row: RevisionEntity, previousHash: string | null): RevisionPayload {
-  const fault = faultOfText(row) ?? faultOfRow(row, previousHash);
+  if (sha256(row.payload) !== row.payloadHash) throw damaged(row, 'the payload does not match its hash');
+  const parsed = z.safeParse(revisionPayload, completedPayload(JSON.parse(row.payload)));
+  if (!parsed.success) throw damaged(row, 'the payload is no revision payload');
+  const fault = faultOfRow(row, parsed.data, previousHash);
   if (fault) throw damaged(row, fault);
-  return z.parse(revisionPayload, JSON.parse(row.payload));
+  return parsed.data;
 }
 
-function faultOfText(row: RevisionEntity): string | null {
-  if (sha256(row.payload) !== row.payloadHash) return 'the payload does not match its hash';
-  const parsed = z.safeParse(revisionPayload, JSON.parse(row.payload));
-  return parsed.success ? null : 'the payload is no revision payload';
+/** A payload in the present version's terms; what is no payload is left for the schema to refuse. */
+function completedPayload(json: unknown): unknown {
+  if (typeof json !== 'object' || json === null) return json;
+  const { document, reading } = json as Record<string, unknown>;
+  return { ...json, document: upgradeDocument(document), reading: completeReading(reading) };
 }
 
-function faultOfRow(row: RevisionEntity, previousHash: string | null): string | null {
-  const payload = z.parse(revisionPayload, JSON.parse(row.payload));
+function faultOfRow(
+  row: RevisionEntity,
+  payload: RevisionPayload,
+  previousHash: string | null,
+): string | null {
   const pairs: Array<[name: string, inRow: unknown, frozen: unknown]> = [
     ['id', row.id, payload.revisionId],
     ['net', row.netId, payload.netId],

@@ -1,4 +1,4 @@
-import { FLOW_NET_VERSION } from './document.ts';
+import { type DocumentEntity, documentEntity, FLOW_NET_VERSION } from './document.ts';
 
 /** What brings a document of a version, as parsed JSON, to the next one. */
 const UPGRADES: Readonly<Record<number, (document: Record<string, unknown>) => Record<string, unknown>>> = {
@@ -20,4 +20,13 @@ export function upgradeDocument(json: unknown): unknown {
     document = { ...upgrade(document), version };
   }
   return document;
+}
+
+/**
+ * An entity that an earlier version of the page kept in the browser, with the fields that were added since; one that the
+ * schema refuses comes back as it is, for the server to say what is the matter with it.
+ */
+export function completeEntity(kept: unknown): DocumentEntity {
+  const parsed = documentEntity.safeParse(kept);
+  return parsed.success ? parsed.data : (kept as DocumentEntity);
 }

@@ -89,6 +89,7 @@ export const pointReading = z.object({
 });
 export type PointReading = z.infer<typeof pointReading>;
 
+/** What is added here needs its value for readings frozen before, in `reading-versions.ts`. */
 export const netReading = z.object({
   state: z.enum(['read', 'unfinished']),
   findings: z.array(finding),

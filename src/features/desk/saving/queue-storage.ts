@@ -1,4 +1,6 @@
 import { type DBSchema, type IDBPDatabase, openDB } from 'idb';
+import { completeEntity } from '#shared/contract/document-versions.ts';
+import type { NetOp } from '#shared/contract/nets.ts';
 import type { QueuedBatch, SaveQueue } from './save-queue.ts';
 
 /** Keeps the queues of this browser, one for each person and net, across reloads and closed tabs. */
@@ -43,7 +45,23 @@ async function load(db: IDBPDatabase<DeskSchema>, owner: string): Promise<SaveQu
   const range = IDBKeyRange.bound([owner, 0], [owner, Number.MAX_SAFE_INTEGER]);
   const stored = await transaction.objectStore('batches').getAll(range);
   await transaction.done;
-  return header ? { ...header, batches: stored.map(({ owner: _owner, ...batch }) => batch) } : null;
+  if (!header) return null;
+  return completeQueue({ ...header, batches: stored.map(({ owner: _owner, ...batch }) => batch) });
+}
+
+/** Work that an earlier version of the page left behind gets the fields that entities have today. */
+function completeQueue(kept: SaveQueue): SaveQueue {
+  const complete = (op: NetOp): NetOp => (op.op === 'put' ? { ...op, value: completeEntity(op.value) } : op);
+  return {
+    ...kept,
+    batches: kept.batches.map((batch) => ({ ...batch, ops: batch.ops.map(complete) })),
+    conflicts: kept.conflicts.map((conflict) => ({
+      ...conflict,
+      mine: conflict.mine && completeEntity(conflict.mine),
+      theirs: conflict.theirs && { ...conflict.theirs, value: completeEntity(conflict.theirs.value) },
+    })),
+    refused: kept.refused.map((batch) => ({ ...batch, ops: batch.ops.map(complete) })),
+  };
 }
 
 async function save(

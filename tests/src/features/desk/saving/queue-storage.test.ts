@@ -47,4 +47,14 @@ describe('the queue kept in the browser', () => {
     expect((await storage.load(queueOwner('tove', 'net one')))?.clientId).toBe('c2');
     expect((await storage.load(queueOwner('iris', 'net one')))?.clientId).toBe('c1');
   });
+
+  it('of an earlier version comes back with the fields that lines have today', async () => {
+    const storage = await openQueueStorage();
+    const owner = queueOwner('iris', 'net three');
+    const { origin: _added, ...older } = line;
+    const op = { op: 'put' as const, entityId: LINE_A, baseVersion: 0, value: older as typeof line };
+    await storage.save(owner, null, enqueue(emptyQueue('c3'), { ...command(1), ops: [op] }));
+    const kept = await storage.load(owner);
+    expect(kept?.batches[0]?.ops).toEqual([{ ...op, value: { ...older, origin: 'traced' } }]);
+  });
 });
