@@ -20,6 +20,8 @@ export type StripLine = {
   readonly end: Foot | null;
   /** A potential boundary bounds a strip only between the places where the carriers meet it. */
   readonly isBoundary: boolean;
+  /** True when `shape` runs against the line as the carriers know it. */
+  readonly isReversed?: boolean;
 };
 
 /** The ground between two neighbouring head lines, in base-raster pixels. */
@@ -91,7 +93,7 @@ function outlined(before: StripLine, far: StripLine, graph: CarrierGraph, limit:
 
 function reversedLine(line: StripLine): StripLine {
   const shape = polylineOf(pointsOf(line.shape).reverse()) ?? line.shape;
-  return { ...line, shape, start: line.end, end: line.start };
+  return { ...line, shape, start: line.end, end: line.start, isReversed: true };
 }
 
 function pointsOf(shape: Polyline): Pair[] {
@@ -135,7 +137,8 @@ function closingWay(
       { line: after.id, s: null },
       limit,
     );
-    if (way) return { points: way.points, beforeS: null, afterS: way.endS, open: false };
+    const along = (s: number) => (after.isReversed ? lengthOf(after.shape) - s : s);
+    if (way) return { points: way.points, beforeS: null, afterS: along(way.endS), open: false };
   }
   return straightJoin(before, after, end);
 }
