@@ -7,6 +7,8 @@ export type RefineOptions = {
   readonly wanted: (region: number) => boolean;
   /** Refinement ends when the mesh has this many vertices. */
   readonly mostVertices: number;
+  /** Triangles to part whatever their size. */
+  readonly marked?: Iterable<number>;
 };
 
 /** Greatest circumradius over shortest edge that is left alone: √2, no angle below 20.7° (Ruppert 1995). */
@@ -44,6 +46,7 @@ class Refiner {
 
   run(): boolean {
     for (let t = 0; t < this.mesh.triangleCount; t += 1) this.note(t);
+    for (const t of this.options.marked ?? []) this.later.push(this.cornersOf(t));
     while (this.mesh.x.length < this.options.mostVertices) {
       const segment = this.segments.pop();
       if (segment !== undefined) {
@@ -72,7 +75,12 @@ class Refiner {
     for (let e = 3 * t; e < 3 * t + 3; e += 1) {
       if (label[e] !== FREE && this.mustHalve(e)) this.segments.push([corner[e]!, corner[nextOf(e)]!]);
     }
-    if (this.isBad(t)) this.later.push([t, corner[3 * t]!, corner[3 * t + 1]!, corner[3 * t + 2]!]);
+    if (this.isBad(t)) this.later.push(this.cornersOf(t));
+  }
+
+  private cornersOf(t: number): Corners {
+    const { corner } = this.mesh;
+    return [t, corner[3 * t]!, corner[3 * t + 1]!, corner[3 * t + 2]!];
   }
 
   private noteAround(vertex: number): void {
@@ -170,7 +178,7 @@ class Refiner {
     const upset = this.encroachedBy(place.triangle, px, py);
     if (upset.length > 0) {
       const halved = upset.filter(([from, to]) => this.halveForShape(mesh.find(from, to)));
-      if (halved.length > 0) this.note(Math.floor(t));
+      if (halved.length > 0) this.note(t);
       return;
     }
     const vertex = mesh.addVertex(px, py);

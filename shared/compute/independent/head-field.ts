@@ -1,0 +1,69 @@
+import type { Tensor } from '#shared/compute/independent/conductivity.ts';
+import {
+  elementStiffness,
+  type FieldSolution,
+  solveField,
+  unknownsOf,
+} from '#shared/compute/independent/elliptic-system.ts';
+import type { BoundarySide, QuadraticMesh } from '#shared/compute/independent/quadratic-mesh.ts';
+import type { SectionCondition } from '#shared/compute/independent/section-problem.ts';
+
+/** A mesh with what is known of it: the condition of each label, permeability of each region, elevation of each node. */
+export type HeadProblem = {
+  readonly mesh: QuadraticMesh;
+  readonly conditions: readonly SectionCondition[];
+  readonly tensorOf: (element: number) => Tensor;
+  readonly elevations: Float64Array;
+};
+
+/** Heads at the nodes, what flows in at them, and for each node the head it is held at (NaN where it is free). */
+export type HeadField = FieldSolution & { readonly held: Float64Array };
+
+const MOST_ROUNDS = 40;
+
+/**
+ * The head in a section: held along heads, h = z along faces of free outflow as far as water comes out there, closed
+ * elsewhere. Which part of the faces lets water out is found by turns: a side that would take water in is closed, a
+ * closed side with pressure above zero is opened (Neuman and Witherspoon 1970). Null when nothing holds a part of it.
+ */
+export function headField(problem: HeadProblem): HeadField | null {
+  const { mesh, conditions } = problem;
+  const elements = elementStiffness(mesh, problem.tensorOf);
+  const free = mesh.sides.filter((side) => conditions[side.label]?.kind === 'freeOutflow');
+  const open = new Set(free);
+  for (let round = 0; ; round += 1) {
+    const held = heldHeads(problem, open);
+    const solution = solveField(mesh, elements, unknownsOf(held));
+    if (solution === null) return null;
+    const wrong = free.filter((side) => isWrong(problem, solution, side, open.has(side)));
+    if (wrong.length === 0 || round === MOST_ROUNDS) return { ...solution, held };
+    for (const side of wrong) if (!open.delete(side)) open.add(side);
+  }
+}
+
+function heldHeads(
+  { mesh, conditions, elevations }: HeadProblem,
+  open: ReadonlySet<BoundarySide>,
+): Float64Array {
+  const held = new Float64Array(mesh.x.length).fill(Number.NaN);
+  for (const side of mesh.sides) {
+    if (!open.has(side)) continue;
+    for (const node of side.nodes) held[node] = elevations[node]!;
+  }
+  for (const { label, nodes } of mesh.sides) {
+    const condition = conditions[label];
+    if (condition?.kind !== 'head') continue;
+    for (const node of nodes) held[node] = condition.head;
+  }
+  return held;
+}
+
+function isWrong(
+  { elevations }: HeadProblem,
+  { values, inflow }: FieldSolution,
+  { nodes }: BoundarySide,
+  isOpen: boolean,
+): boolean {
+  const middle = nodes[1];
+  return isOpen ? inflow[middle]! > 0 : values[middle]! > elevations[middle]!;
+}
