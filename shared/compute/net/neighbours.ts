@@ -141,16 +141,13 @@ function linkBetween(a: HeadLine, b: HeadLine, sightings: Sightings): NeighbourL
     line.role !== 'equipotential' || (view !== null && view.share >= LEAST_SHARE);
   const linked = (fromA?.foremost && seen(fromB, b)) || (fromB?.foremost && seen(fromA, a));
   if (!linked) return null;
-  const pairs = [
-    ...(fromA?.pairs ?? []),
-    ...(fromB?.pairs ?? []).map(([own, other]) => [other, own] as const),
-  ];
   return {
     a: a.id,
     sideA: fromA?.side ?? 0,
     b: b.id,
     sideB: fromB?.side ?? 0,
-    sameDirection: covariance(pairs) >= 0,
+    // Each line's own view by itself: past the tip of a wall the two views lie far apart, and together would say the contrary.
+    sameDirection: covariance(fromA?.pairs ?? []) + covariance(fromB?.pairs ?? []) >= 0,
   };
 }
 
