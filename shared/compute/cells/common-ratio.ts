@@ -1,0 +1,68 @@
+import type { NetCell } from '#shared/compute/cells/cells.ts';
+import type { Pair } from '#shared/compute/geometry/predicates.ts';
+
+/** What is known of a net besides its lines, where cells are compared with one another. */
+export type CellFacts = {
+  /** Drops from one head line to the next as far as typed or counted; 1 where nobody has said. */
+  readonly dropsBetween: (before: string, after: string) => number;
+  /** Permeability at a place (working pixels) over that of the soil in which the channels are counted; null when unknown. */
+  readonly relativeK: (at: Pair) => number | null;
+};
+
+/** One drop between all lines, one soil. */
+export const PLAIN_FACTS: CellFacts = { dropsBetween: () => 1, relativeK: () => 1 };
+
+/** Within this factor the measured ratio of the cells is taken for the entered one. */
+const SAME_RATIO = 1.2;
+
+/**
+ * Flow through a cell for each drop of head and unit permeability of the counted soil: (k/kc)·ΔNd·B/L, dimensionless.
+ * In a net of equal channels it is one number for all cells, squares or not, part drops and other soils included (flow
+ * between two flow lines is the same all along: Forchheimer; Casagrande 1937). Null for cells that are not judged, and
+ * where the permeability is unknown.
+ */
+export function cellFlow(cell: NetCell, facts: CellFacts): number | null {
+  if (cell.notJudged !== null) return null;
+  const k = facts.relativeK(cell.measures.middle);
+  const flow = k === null ? Number.NaN : k * facts.dropsBetween(cell.before, cell.after) * cell.ratio;
+  return Number.isFinite(flow) && flow > 0 ? flow : null;
+}
+
+/**
+ * Middle value of positive numbers; of the two middle ones of an even count the one nearer to `expected`, in
+ * proportion. Null of none.
+ */
+export function middleValue(values: readonly number[], expected: number): number | null {
+  const sorted = [...values].sort((a, b) => a - b);
+  const low = sorted[(sorted.length - 1) >> 1];
+  const high = sorted[sorted.length >> 1];
+  if (low === undefined || high === undefined) return null;
+  return Math.abs(Math.log(low / expected)) <= Math.abs(Math.log(high / expected)) ? low : high;
+}
+
+/**
+ * Standard deviation of ln(B/L) that the tracing accuracy gives a cell: both ends of both mean lengths are off by it,
+ * and the four lines of each mean halve that again at best; the whole √2 is not taken off, since neighbouring vertices
+ * of one line tremble together. `accuracyPx` in working pixels; dimensionless.
+ */
+export function tremorOf({ measures }: NetCell, accuracyPx: number): number {
+  return accuracyPx * Math.hypot(1 / measures.length, 1 / measures.width);
+}
+
+/** The ratio by which cells are judged, and the middle one measured, B/L; `measured` null while there is no cell. */
+export type CommonRatio = {
+  readonly judgedBy: number;
+  readonly measured: number | null;
+  readonly agrees: boolean;
+};
+
+/**
+ * The B/L that the cells of a net have in common: the entered one where the cells measure about that, else the middle
+ * of the measured ones, since heads hang on cells being alike and not on the figure entered.
+ */
+export function commonRatioOf(cells: readonly NetCell[], entered: number, facts: CellFacts): CommonRatio {
+  const flows = cells.map((cell) => cellFlow(cell, facts)).filter((flow) => flow !== null);
+  const measured = middleValue(flows, entered);
+  const agrees = measured === null || Math.abs(Math.log(measured / entered)) <= Math.log(SAME_RATIO);
+  return { judgedBy: agrees ? entered : measured, measured, agrees };
+}
