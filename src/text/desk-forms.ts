@@ -142,6 +142,8 @@ export const lineText = {
   } satisfies Record<LineKind, string>,
   name: 'Name',
   unfinished: 'This line is not finished and is left out of the reading.',
+  guessed: 'A first guess from the geometry. Drag its vertices to where the drawing or the readings put it.',
+  takeAsTraced: 'Take as traced',
   counted: (drops: string, head: string) => `Counted: ${drops} drops down, head ${head}.`,
   placed: (drops: string) =>
     `By its order ${drops} drops down. It has no head while the count does not stand.`,

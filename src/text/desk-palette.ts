@@ -2,6 +2,13 @@ import type { BoundaryKind, ToolId } from '#client/features/desk/model/tool-choi
 
 export type PaletteTool = ToolId | 'waterLevels';
 
+/** The offer of a first guess of the phreatic line. */
+export const firstGuessText = {
+  offer: 'Not on the drawing? Start from a guess by the geometry and adjust it.',
+  draw: 'Draw a first guess',
+  drew: 'drew a first guess of the phreatic line',
+} as const;
+
 /** Words of the tool palette. */
 export const deskPaletteText = {
   title: 'Drawing tools',

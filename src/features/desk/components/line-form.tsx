@@ -25,6 +25,14 @@ export function LineForm({ lineId, ...form }: DeskFormProps & { lineId: string }
   return (
     <FormPane title={value.name ? `${kind} ${value.name}` : kind} onClose={onClose}>
       {value.finished ? null : <p className="m-0 text-attention">{text.unfinished}</p>}
+      {value.origin === 'guessed' ? (
+        <div>
+          <p className="mt-0 mb-1.5 text-attention">{text.guessed}</p>
+          <Button disabled={disabled} onClick={() => change({ origin: 'traced' })}>
+            {text.takeAsTraced}
+          </Button>
+        </div>
+      ) : null}
       <FormFindings findings={findings} />
       <Choice
         label={text.kind}

@@ -4,6 +4,7 @@ import { type PaletteTool, deskPaletteText as text } from '#client/text/desk-pal
 import type { DeskStore } from '../model/desk-state.ts';
 import { BOUNDARY_KINDS, type BoundaryKind } from '../model/tool-choice.ts';
 import { TOOL_KEYS, WATER_KEY } from './desk-keys.ts';
+import { FirstGuess } from './first-guess.tsx';
 import { ToolHint } from './tool-hint.tsx';
 import { ToolIcon } from './tool-icons.tsx';
 
@@ -45,6 +46,7 @@ export function ToolPalette({ store, layout = 'column', className }: ToolPalette
       ))}
       <HistoryButtons store={store} column={column} />
       {column && <ToolHint store={store} />}
+      {column && <FirstGuess store={store} />}
     </nav>
   );
 }

@@ -6,7 +6,7 @@ import { fixedText, plainText } from '#shared/text/number-text.ts';
 import type { HideableKind } from '../model/desk-state.ts';
 import type { Selection } from '../model/selection.ts';
 import type { SheetFrame } from '../model/viewport.ts';
-import { COLOURS, lookOf, unfinishedLook } from './line-look.ts';
+import { COLOURS, lookOf, tracedLook, unfinishedLook } from './line-look.ts';
 import { placeWords } from './place-words.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
 
@@ -85,7 +85,8 @@ function isChosen(id: string, input: SceneInput): boolean {
 
 function lineItem({ id, value }: Shown, input: SceneInput): SceneLine[] {
   if (value.kind !== 'line' || value.points.length === 0) return [];
-  const look = value.finished || input.draftId === id ? lookOf(value.line) : unfinishedLook(value.line);
+  const drawn = value.finished || input.draftId === id;
+  const look = drawn ? tracedLook(value.line, value.origin) : unfinishedLook(value.line);
   return [{ id, shape: 'line', points: value.points, look, strong: isChosen(id, input) }];
 }
 

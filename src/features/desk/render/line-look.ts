@@ -1,4 +1,4 @@
-import type { LineKind } from '#shared/contract/document.ts';
+import type { LineKind, TracedLine } from '#shared/contract/document.ts';
 
 export const COLOURS = {
   ink: '#1c2733',
@@ -37,6 +37,11 @@ const LOOKS: Record<LineKind, LineLook> = {
 
 export function lookOf(kind: LineKind): LineLook {
   return LOOKS[kind];
+}
+
+/** A line by its origin: what is only guessed is drawn of single dots, open at its ends. */
+export function tracedLook(kind: LineKind, origin: TracedLine['origin']): LineLook {
+  return origin === 'guessed' ? { ...LOOKS[kind], dashPx: [2, 7], end: 'ring' } : LOOKS[kind];
 }
 
 /** A line that is still being drawn: of its kind's colour, finely dashed and open at its ends. */
