@@ -1,4 +1,5 @@
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
+import { MIDDLES, shapeValues } from '#shared/compute/independent/quadratic-element.ts';
 import type { QuadraticMesh } from '#shared/compute/independent/quadratic-mesh.ts';
 
 /** The four triangles between corners and middles of an element, by places in its list of nodes. */
@@ -10,8 +11,8 @@ const QUARTERS = [
 ] as const;
 
 /**
- * Lines along which a field has a value, in the mesh's frame: the field is taken as linear within the quarters of the
- * elements. Lines end at the edge of the mesh or close on themselves (first point repeated). A place with just the
+ * Lines along which a field has a value, in the mesh's frame: straight within the quarters of the elements, between
+ * places at which the quadratic field has the value. Lines end at the edge of the mesh or close on themselves (first point repeated). A place with just the
  * value counts as above it.
  */
 export function contourLines(mesh: QuadraticMesh, values: Float64Array, level: number): Pair[][] {
@@ -24,8 +25,9 @@ export function contourLines(mesh: QuadraticMesh, values: Float64Array, level: n
   };
   for (let n = 0; 6 * n < mesh.elements.length; n += 1) {
     for (const quarter of QUARTERS) {
-      const nodes = quarter.map((k) => mesh.elements[6 * n + k]!);
-      const crossed = [0, 1, 2].flatMap((k) => crossing(mesh, values, level, nodes[k]!, nodes[(k + 1) % 3]!));
+      const crossed = [0, 1, 2].flatMap((k) =>
+        crossing(mesh, n, values, level, [quarter[k]!, quarter[(k + 1) % 3]!]),
+      );
       const [first, second] = crossed;
       if (first === undefined || second === undefined) continue;
       places.set(first.key, first.at);
@@ -37,19 +39,45 @@ export function contourLines(mesh: QuadraticMesh, values: Float64Array, level: n
   return chained(links).map((keys) => keys.map((key) => places.get(key)!));
 }
 
+/** Area coordinates of the six nodes of an element. */
+const NODE_PLACES: ReadonlyArray<readonly [number, number, number]> = [
+  [1, 0, 0],
+  [0, 1, 0],
+  [0, 0, 1],
+  ...MIDDLES,
+];
+
+/** Where the field has the level between two nodes of an element, given by their places in its list; empty if nowhere. */
 function crossing(
-  { x, y }: QuadraticMesh,
+  mesh: QuadraticMesh,
+  n: number,
   values: Float64Array,
   level: number,
-  a: number,
-  b: number,
+  ends: readonly [number, number],
 ): Array<{ key: string; at: Pair }> {
+  const nodeOf = (k: number) => mesh.elements[6 * n + k]!;
   // Taken in one direction whichever element asks, so that both get the same place.
-  const [i, j] = a < b ? [a, b] : [b, a];
-  const [u, v] = [values[i]! - level, values[j]! - level];
-  if (u >= 0 === v >= 0) return [];
-  const t = u / (u - v);
-  return [{ key: `${i},${j}`, at: [x[i]! + t * (x[j]! - x[i]!), y[i]! + t * (y[j]! - y[i]!)] }];
+  const [i, j] = nodeOf(ends[0]) < nodeOf(ends[1]) ? ends : ([ends[1], ends[0]] as const);
+  const [a, b] = [nodeOf(i), nodeOf(j)];
+  if (values[a]! >= level === values[b]! >= level) return [];
+  const t = partOfWay((part) => {
+    const at = NODE_PLACES[i]!.map((from, k) => from + part * (NODE_PLACES[j]![k]! - from));
+    const weights = shapeValues([at[0]!, at[1]!, at[2]!]);
+    return weights.reduce((sum, weight, k) => sum + weight * values[nodeOf(k)]!, -level);
+  });
+  const { x, y } = mesh;
+  return [{ key: `${a},${b}`, at: [x[a]! + t * (x[b]! - x[a]!), y[a]! + t * (y[b]! - y[a]!)] }];
+}
+
+/** A zero of a quadratic between 0 and 1, of different signs there: by its three values, the stabler form of the root. */
+function partOfWay(f: (part: number) => number): number {
+  const [start, middle, end] = [f(0), f(0.5), f(1)];
+  const c = 2 * (start + end - 2 * middle);
+  const slope = end - start - c;
+  const root = Math.sqrt(Math.max(0, slope * slope - 4 * c * start));
+  const q = -0.5 * (slope + (slope >= 0 ? root : -root));
+  const candidates = [q / c, start / q].filter((t) => t >= 0 && t <= 1);
+  return candidates[0] ?? start / (start - end);
 }
 
 /** Chains of linked keys: open ones from their ends first, then closed ones. */
