@@ -22,6 +22,13 @@ import { checkWaterline } from '#shared/compute/net/waterline.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { SetOut } from '#shared/compute/set-out.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
+import { type CommonAnisotropy, commonAnisotropy } from '#shared/compute/soils/anisotropy.ts';
+import {
+  findingOnSheet,
+  tracesInWorkingFrame,
+  type WorkingFrame,
+  workingFrameOf,
+} from '#shared/compute/working-frame.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, NetReading } from '#shared/contract/reading.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
@@ -31,6 +38,10 @@ const WATERLINE_PART = 0.05;
 
 /** A set-out net in order and counted, against which points are read by whatever rule. */
 export type PreparedNet = {
+  /** Model, heads and ground are in its working pixels; the findings have their places on the sheet. */
+  readonly frame: WorkingFrame;
+  /** The document with its traces in working pixels. */
+  readonly working: FlowNetDocument;
   readonly model: NetModel;
   readonly heads: NetHeads;
   readonly ground: ReadingGround;
@@ -54,12 +65,15 @@ export function placedPoints(document: FlowNetDocument, map: SectionMap | null):
 export function prepareNet(
   document: FlowNetDocument,
   setOut: SetOut,
-  map: SectionMap,
+  sheetMap: SectionMap,
   inputs: SingleInputs,
 ): PreparedNet {
   const { water, permeability, count } = inputs;
-  const model = modelNet(document, map, water, count.tracingAccuracyPx);
-  const accuracy = count.tracingAccuracyPx * map.unitsPerPx;
+  const frame = workingFrameOf(sheetMap, anisotropyOf(document, inputs));
+  const working = tracesInWorkingFrame(document, frame);
+  const { map } = frame;
+  const model = modelNet(working, map, water, count.tracingAccuracyPx);
+  const accuracy = count.tracingAccuracyPx * map.elevationPerPx;
   const levelUnit = elevationUnit(document.unitSystem, document.datum);
   const heads = headsOf(model, map, water.headwater, count.drops, accuracy);
   const channels = countChannels(model.equipotentials, linesOfKind(model.lines, 'flowLine'), slackOf(inputs));
@@ -69,8 +83,7 @@ export function prepareNet(
     inputs,
     document.unitSystem,
   );
-  const findings = [
-    ...setOut.findings,
+  const netFindings = [
     ...model.findings,
     ...heads.findings,
     ...waterlineFindings(model, heads, map, inputs, levelUnit),
@@ -85,8 +98,11 @@ export function prepareNet(
     ...channels.findings,
     ...quantityFindings,
   ];
+  const findings = [...setOut.findings, ...netFindings.map((found) => findingOnSheet(found, frame))];
   const finished = !withholdsFigures(findings) && heads.count !== null;
   return {
+    frame,
+    working,
     model,
     heads,
     ground: groundOf(model, heads, setOut, map, inputs, levelUnit),
@@ -94,6 +110,12 @@ export function prepareNet(
     findings,
     finished,
   };
+}
+
+/** kh/kv and dip of the soils that are said to lie somewhere in the section. */
+function anisotropyOf(document: FlowNetDocument, inputs: SingleInputs): CommonAnisotropy {
+  const soils = entitiesOf(document, 'soil').filter(({ value }) => value.places.length > 0);
+  return commonAnisotropy([inputs.permeability, ...soils.map(({ value }) => value)]);
 }
 
 /** Pixels by which a traced line may miss what it is meant to meet. */
@@ -111,7 +133,7 @@ function waterlineFindings(
   if (heads.headwater === null) return [];
   const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
   const tolerance = Math.max(
-    3 * Math.hypot(tracingAccuracyPx, knownPointAccuracyPx) * map.unitsPerPx,
+    3 * Math.hypot(tracingAccuracyPx, knownPointAccuracyPx) * map.elevationPerPx,
     WATERLINE_PART * (heads.count?.headPerDrop ?? 0),
   );
   return checkWaterline(model.lines, map, heads.headwater, tolerance, levelUnit);
@@ -146,7 +168,7 @@ function groundOf(
       setOut.reading.residual,
       knownPointAccuracyPx,
       tracingAccuracyPx,
-      map.unitsPerPx,
+      map.elevationPerPx,
     ),
     unequal: heads.count?.unequal ?? false,
   };

@@ -14,6 +14,7 @@ import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
 import { type SingleInputs, singleInputs } from '#shared/compute/single-inputs.ts';
+import { findingOnSheet, type WorkingFrame } from '#shared/compute/working-frame.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { Finding, LineReading, NetReading, PointReading } from '#shared/contract/reading.ts';
 
@@ -31,7 +32,7 @@ export function readNet(document: FlowNetDocument): NetReading {
   const tangles = findTangles(netLinesOf(document), inputs.count.tracingAccuracyPx);
   // Nothing is worked out from a tangle: it would take its time over every crossing, and come to nothing.
   if (setOut.map === null || tangles.length > 0) return withoutNet(document, setOut, tangles, inputs, points);
-  return readOnSection(document, setOut, setOut.map, inputs, points);
+  return readOnSection(document, setOut, setOut.map, inputs);
 }
 
 function withoutNet(
@@ -62,10 +63,11 @@ function readOnSection(
   setOut: SetOut,
   map: SectionMap,
   inputs: SingleInputs,
-  points: readonly PlacedPoint[],
 ): NetReading {
-  const { model, heads, ground, quantities, findings, finished } = prepareNet(document, setOut, map, inputs);
-  const extent = extentOf(model.lines, map);
+  const prepared = prepareNet(document, setOut, map, inputs);
+  const { frame, model, heads, ground, quantities, findings, finished } = prepared;
+  const points = placedPoints(prepared.working, frame.map);
+  const extent = extentOf(model.lines, frame.map);
   return {
     state: finished ? 'read' : 'unfinished',
     findings: [...findings],
@@ -74,10 +76,19 @@ function readOnSection(
     points: points.map((point) => {
       const reading = finished ? readPoint(point, ground) : withheldBy(point, findings);
       const far = questionPlace(point, extent, document.unitSystem);
-      return { ...reading, findings: [...reading.findings, ...far] };
+      return pointOnSheet({ ...reading, findings: [...reading.findings, ...far] }, frame);
     }),
     quantities,
   };
+}
+
+/** A reading made in the working frame, with its places on the sheet. */
+function pointOnSheet(reading: PointReading, frame: WorkingFrame): PointReading {
+  if (frame.isSheet) return reading;
+  const findings = reading.findings.map((found) => findingOnSheet(found, frame));
+  if (reading.sheetAt === null) return { ...reading, findings };
+  const [x, y] = frame.toSheet(reading.sheetAt);
+  return { ...reading, sheetAt: [x, y], findings };
 }
 
 function withheldBy(point: PlacedPoint, findings: readonly Finding[]): PointReading {

@@ -38,7 +38,7 @@ export function readField(document: FlowNetDocument): FieldReading[] {
     return points.map(({ id }) => ({ id, totalHead: null, dropsLost: null }));
   }
   const fields = fieldsOnDemand(prepared.ground);
-  return points.map(({ id, sheetAt }) => ({
+  return placedPoints(prepared.working, prepared.frame.map).map(({ id, sheetAt }) => ({
     id,
     ...(sheetAt === null ? { totalHead: null, dropsLost: null } : readAt(sheetAt, prepared.ground, fields)),
   }));
