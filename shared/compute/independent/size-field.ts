@@ -13,6 +13,8 @@ export type FineCorner = {
   readonly exponent: number;
   readonly reach: number;
   readonly singular: boolean;
+  /** Part of the reach at which the mesh begins; by the exponent if left out. */
+  readonly finest?: number;
 };
 
 /** Exponents at or above this bound the gradient, or nearly so. */
@@ -116,10 +118,10 @@ export function sizeField(
   corners: readonly FineCorner[],
   coarsest: number,
 ): (x: number, y: number) => number {
-  const sources = corners.map(({ x, y, exponent, reach, singular }) => ({
+  const sources = corners.map(({ x, y, exponent, reach, singular, finest }) => ({
     x,
     y,
-    finest: Math.min(coarsest, reach * (singular ? MISSED ** (1 / (2 * exponent)) : FINE_END)),
+    finest: Math.min(coarsest, reach * (finest ?? (singular ? MISSED ** (1 / (2 * exponent)) : FINE_END))),
   }));
   return (x, y) => {
     let size = coarsest;
@@ -131,4 +133,16 @@ export function sizeField(
     }
     return size;
   };
+}
+
+/** Length of the edges of `elements` equal triangles over the area of a section. */
+export function coarsestSize({ mesh }: SectionOutline, elements: number): number {
+  let area = 0;
+  for (let t = 0; t < mesh.triangleCount; t += 1) {
+    if (mesh.region[t] === OUTSIDE) continue;
+    const [a, b, c] = [mesh.corner[3 * t]!, mesh.corner[3 * t + 1]!, mesh.corner[3 * t + 2]!];
+    const { x, y } = mesh;
+    area += ((x[b]! - x[a]!) * (y[c]! - y[a]!) - (y[b]! - y[a]!) * (x[c]! - x[a]!)) / 2;
+  }
+  return Math.sqrt((4 * area) / (Math.sqrt(3) * elements));
 }

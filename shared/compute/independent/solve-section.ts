@@ -1,8 +1,15 @@
+import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { type EnergyGap, energyGap } from '#shared/compute/independent/energy-gap.ts';
 import { exitGradients } from '#shared/compute/independent/exit-gradients.ts';
-import { type HeadField, type HeadProblem, headField } from '#shared/compute/independent/head-field.ts';
+import { freeSurface } from '#shared/compute/independent/free-surface.ts';
+import {
+  contradictoryNode,
+  type HeadField,
+  type HeadProblem,
+  headField,
+} from '#shared/compute/independent/head-field.ts';
+import { headProblemOf } from '#shared/compute/independent/head-problem.ts';
 import { pieceFlows } from '#shared/compute/independent/piece-flows.ts';
-import { quadraticMesh } from '#shared/compute/independent/quadratic-mesh.ts';
 import { toSection } from '#shared/compute/independent/section-frame.ts';
 import { OUTSIDE, outlineOf, type SectionOutline } from '#shared/compute/independent/section-outline.ts';
 import {
@@ -11,7 +18,12 @@ import {
   type SectionProblem,
 } from '#shared/compute/independent/section-problem.ts';
 import type { SectionSolution } from '#shared/compute/independent/section-solution.ts';
-import { type FineCorner, fineCorners, sizeField } from '#shared/compute/independent/size-field.ts';
+import {
+  coarsestSize,
+  type FineCorner,
+  fineCorners,
+  sizeField,
+} from '#shared/compute/independent/size-field.ts';
 import {
   type StreamField,
   streamFunction,
@@ -45,7 +57,47 @@ export function solveSection(
 ): SectionSolution | SectionFailure {
   const outline = outlineOf(problem);
   if ('ok' in outline) return outline;
-  return solveConfined(problem, outline, { ...USUAL, ...options });
+  const all = { ...USUAL, ...options };
+  return problem.unconfined ? solveUnconfined(problem, outline, all) : solveConfined(problem, outline, all);
+}
+
+/** Finds the free surface and solves the section below it, the surface being closed. */
+function solveUnconfined(
+  problem: SectionProblem,
+  outline: SectionOutline,
+  options: Required<SolveOptions>,
+): SectionSolution | SectionFailure {
+  if (!outline.conditions.some(({ kind }) => kind === 'head')) return noHead();
+  const surface = freeSurface(outline, options.elements);
+  if ('ok' in surface) return surface;
+  const toOwn = (place: Pair) => toSection(outline.frame, place);
+  const lines = surface.lines.map((line) => upstreamFirst(line.map(toOwn)));
+  const below: SectionProblem = {
+    ...problem,
+    boundary: [
+      ...problem.boundary,
+      ...lines.map((points) => ({ points, condition: { kind: 'closed', id: SURFACE_ID } as const })),
+    ],
+    inside: surface.wetPlaces.map(toOwn),
+  };
+  const belowOutline = outlineOf(below);
+  if ('ok' in belowOutline) return belowOutline;
+  const solution = solveConfined(below, belowOutline, options);
+  return solution.ok ? { ...solution, phreatic: lines } : solution;
+}
+
+/** Id of the free surface among the pieces of an outline. */
+export const SURFACE_ID = 'free surface';
+
+function upstreamFirst(line: readonly Pair[]): readonly Pair[] {
+  return line[0]![1] >= line.at(-1)![1] ? line : line.toReversed();
+}
+
+function noHead(): SectionFailure {
+  return failure(
+    'no-head',
+    'No water level acts on the section. Trace a submerged face and enter its level.',
+  );
 }
 
 type Round = {
@@ -87,34 +139,15 @@ function solveConfined(
   }
 }
 
-function coarsestSize({ mesh }: SectionOutline, elements: number): number {
-  let area = 0;
-  for (let t = 0; t < mesh.triangleCount; t += 1) {
-    if (mesh.region[t] === OUTSIDE) continue;
-    const [a, b, c] = [mesh.corner[3 * t]!, mesh.corner[3 * t + 1]!, mesh.corner[3 * t + 2]!];
-    const { x, y } = mesh;
-    area += ((x[b]! - x[a]!) * (y[c]! - y[a]!) - (y[b]! - y[a]!) * (x[c]! - x[a]!)) / 2;
-  }
-  return Math.sqrt((4 * area) / (Math.sqrt(3) * elements));
-}
-
 function solveOnce(outline: SectionOutline): Round | SectionFailure {
-  const { frame, conditions, tensors } = outline;
-  const mesh = quadraticMesh(
-    outline.mesh,
-    (region) => region !== OUTSIDE,
-    (label) => label < conditions.length,
-  );
-  // Heads are counted from the frame's origin, so that high ground costs no digits.
-  const datum = frame.origin[1];
-  const problem: HeadProblem = {
-    mesh,
-    conditions: conditions.map((each) =>
-      each.kind === 'head' ? { ...each, head: each.head - datum } : each,
-    ),
-    tensorOf: (n) => tensors[mesh.regions[n]! - 1]!,
-    elevations: mesh.x.map((x, node) => toSection(frame, [x, mesh.y[node]!])[1] - datum),
-  };
+  const problem = headProblemOf(outline);
+  const torn = contradictoryNode(problem);
+  if (torn !== null)
+    return failure(
+      'contradictory-heads',
+      'Two pieces with different heads touch. Part them by a closed piece or correct a level.',
+      toSection(outline.frame, [problem.mesh.x[torn]!, problem.mesh.y[torn]!]),
+    );
   const head = headField(problem);
   if (head === null)
     return failure('no-head', 'A part of the section is cut off from every water level. Check its outline.');
