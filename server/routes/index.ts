@@ -4,6 +4,7 @@ import { damRoutes } from './dam-routes.ts';
 import { drawingRoutes } from './drawing-routes.ts';
 import { liveRoutes } from './live-routes.ts';
 import { mailRoutes } from './mail-routes.ts';
+import { netFileRoutes } from './net-file-routes.ts';
 import { netRoutes } from './net-routes.ts';
 import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
@@ -24,6 +25,7 @@ export const routes: readonly RouteRecord[] = [
   ...drawingRoutes,
   ...sectionRoutes,
   ...netRoutes,
+  ...netFileRoutes,
   ...commandRoutes,
   ...scheduleRoutes,
   ...noteRoutes,

@@ -7,7 +7,12 @@ import {
   printParseErrorCode,
 } from 'jsonc-parser';
 import * as z from 'zod/mini';
-import { type FlowNetDocument, flowNetDocument } from '#shared/contract/document.ts';
+import {
+  type FlowNetDocument,
+  flowNetDocument,
+  SINGLE_KINDS,
+  type VersionedEntity,
+} from '#shared/contract/document.ts';
 import { upgradeDocument } from '#shared/contract/document-versions.ts';
 
 /** A fault of a net file: the line it is on, the field as a path, and what is the matter. */
@@ -37,7 +42,10 @@ export function parseNetFile(source: string): NetFile {
   const result = flowNetDocument.safeParse(upgradeDocument(JSON.parse(text)), {
     error: z.locales.en().localeError,
   });
-  if (result.success) return { document: result.data };
+  if (result.success) {
+    const faults = entityFaults(result.data, text, root);
+    return faults.length > 0 ? { faults } : { document: result.data };
+  }
   return {
     faults: result.error.issues.map((issue) => ({
       line: lineOf(text, nearestNode(root, issue.path).offset),
@@ -45,6 +53,38 @@ export function parseNetFile(source: string): NetFile {
       message: issue.message,
     })),
   };
+}
+
+/** Entities under another id than their own, two of one id, and two of a kind of which a net has one. */
+function entityFaults(document: FlowNetDocument, text: string, root: Node): NetFileFault[] {
+  const seen = new Set<string>();
+  return Object.entries(document.entities).flatMap(([key, entity]) => {
+    const found = faultOfEntity(key, entity, seen);
+    if (found === null) return [];
+    const path = ['entities', key, ...found.path];
+    return [
+      {
+        line: lineOf(text, nearestNode(root, path).offset),
+        field: fieldOf(path),
+        message: found.message,
+      },
+    ];
+  });
+}
+
+function faultOfEntity(
+  key: string,
+  { id, value: { kind } }: VersionedEntity,
+  seen: Set<string>,
+): { path: string[]; message: string } | null {
+  const own = id.toLowerCase();
+  if (own !== key.toLowerCase())
+    return { path: ['id'], message: 'is another id than the one it stands under' };
+  if (seen.has(own)) return { path: ['id'], message: 'is the id of another entity too' };
+  if (seen.has(kind)) return { path: ['value', 'kind'], message: `is a second ${kind}, and a net has one` };
+  seen.add(own);
+  if (SINGLE_KINDS.includes(kind)) seen.add(kind);
+  return null;
 }
 
 function emptyFault(): NetFileFault {

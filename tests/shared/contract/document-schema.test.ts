@@ -10,7 +10,7 @@ import { finishedDocument } from '#tests/support/net-fixture.ts';
 
 const root = path.resolve(import.meta.dirname, '..', '..', '..');
 const committed = readFileSync(path.join(root, 'shared/contract/flow-net-document.schema.json'), 'utf8');
-const KINDS = documentEntity.def.options.map((option) => option.shape.kind.def.values[0]);
+const KINDS = documentEntity.def.options.flatMap((option) => option.shape.kind.def.values);
 
 describe('the JSON Schema of the document', () => {
   it('refuses what is no net document', () => {
