@@ -1,3 +1,4 @@
+import { fieldsOnDemand } from '#shared/compute/field/strip-fields.ts';
 import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
 import {
@@ -14,7 +15,8 @@ import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
 import { questionPhreaticHeads } from '#shared/compute/net/phreatic-heads.ts';
 import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
-import { type PlacedPoint, placePoint, type ReadingGround } from '#shared/compute/net/read-point.ts';
+import { type PlacedPoint, placePoint } from '#shared/compute/net/read-point.ts';
+import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
 import { questionSoils } from '#shared/compute/net/soil-boundaries.ts';
 import { solidBodies } from '#shared/compute/net/solid-bodies.ts';
 import { questionUpstream } from '#shared/compute/net/upstream-side.ts';
@@ -23,6 +25,7 @@ import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { SetOut } from '#shared/compute/set-out.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
 import { type CommonAnisotropy, commonAnisotropy } from '#shared/compute/soils/anisotropy.ts';
+import { steadyTraces } from '#shared/compute/steady-traces.ts';
 import {
   findingOnSheet,
   tracesInWorkingFrame,
@@ -70,7 +73,7 @@ export function prepareNet(
 ): PreparedNet {
   const { water, permeability, count } = inputs;
   const frame = workingFrameOf(sheetMap, anisotropyOf(document, inputs));
-  const working = tracesInWorkingFrame(document, frame);
+  const working = steadyTraces(tracesInWorkingFrame(document, frame), count.tracingAccuracyPx);
   const { map } = frame;
   const model = modelNet(working, map, water, count.tracingAccuracyPx);
   const accuracy = count.tracingAccuracyPx * map.elevationPerPx;
@@ -150,18 +153,22 @@ function groundOf(
   const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
   const shapes = (...kinds: Parameters<typeof linesOfKind>[1][]) =>
     linesOfKind(model.lines, ...kinds).map((line) => line.shape);
-  return {
+  const fieldGround = {
     map,
-    strips: model.strips,
     heads,
     walls: model.walls.map((wall) => wall.shape),
-    bodies: solidBodies(shapes('impervious'), shapes('equipotential'), model.reach),
-    phreaticLines: shapes('phreaticLine'),
-    faces: shapes('ground', 'submergedFace', 'outflowFace'),
     freeFaces: model.potentials
       .filter((potential) => potential.level === null)
       .map((potential) => potential.shape),
     slack: slackOf(inputs),
+  };
+  return {
+    ...fieldGround,
+    strips: model.strips,
+    fieldOf: fieldsOnDemand(fieldGround),
+    bodies: solidBodies(shapes('impervious'), shapes('equipotential'), model.reach),
+    phreaticLines: shapes('phreaticLine'),
+    faces: shapes('ground', 'submergedFace', 'outflowFace'),
     gammaW: inputs.water.gammaW,
     levelUnit,
     placeDoubt: placeDoubtOf(

@@ -49,7 +49,7 @@ type FirstQuantities =
 const ADDED_TO_READING: Omit<NetReading, FirstReading> = {};
 const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = {};
 const ADDED_TO_LINE: Omit<NetReading['lines'][number], FirstLine> = {};
-const ADDED_TO_POINT: Omit<PointReading, FirstPoint> = {};
+const ADDED_TO_POINT: Omit<PointReading, FirstPoint> = { byHand: null, byField: null };
 const ADDED_TO_QUANTITIES: Omit<Quantities, FirstQuantities> = {};
 
 /**

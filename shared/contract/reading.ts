@@ -74,8 +74,12 @@ export const pointReading = z.object({
   status: z.enum(['read', 'abovePhreatic', 'withheld']),
   /** Why there is no figure; null when there is one. */
   reason: z.nullable(z.object({ code: z.string(), text: z.string() })),
+  /** Drops lost from the headwater, by the field, as all figures of the point. */
   dropsLost: z.nullable(z.number()),
-  /** The neighbouring lines towards the headwater and towards the outlet, and the part of the interval passed. */
+  /**
+   * The neighbouring lines towards the headwater and towards the outlet, and the part of the interval passed by hand's
+   * rule.
+   */
   between: z.nullable(z.object({ before: z.string(), after: z.string(), fraction: z.number() })),
   totalHead: z.nullable(z.number()),
   totalHeadPlusMinus: z.nullable(z.number()),
@@ -83,7 +87,21 @@ export const pointReading = z.object({
   /** u = γw(h − z); 0 above the phreatic line (suction left out), where the heads are null. */
   porePressure: z.nullable(z.number()),
   porePressurePlusMinus: z.nullable(z.number()),
-  /** The count in words. */
+  /** By hand's rule, which explains the figure; null where nothing is read. */
+  byHand: z.nullable(z.object({ totalHead: z.number(), dropsLost: z.number() })),
+  /**
+   * By the field between the two lines, which is the figure; `gradient` is (∂h/∂offset, ∂h/∂elevation), the hydraulic
+   * gradient is its negative. Null where nothing is read, and where the field could not be solved: then the figure is
+   * the hand rule's, and a finding says so.
+   */
+  byField: z.nullable(
+    z.object({
+      totalHead: z.number(),
+      dropsLost: z.number(),
+      gradient: z.tuple([z.number(), z.number()]),
+    }),
+  ),
+  /** How the figure came about, in words. */
   explanation: z.string(),
   findings: z.array(finding),
 });

@@ -13,10 +13,9 @@ export type StripHeads = {
 
 /** The solved field of a strip. */
 export type StripField = {
-  readonly mesh: StripMesh;
-  /** Head at each corner of each triangle, in the order of `mesh.triangles`; NaN where no held line is reached. */
-  readonly heads: Float64Array;
   readonly unknowns: number;
+  /** The field at a place, see `fieldPlaceAt`. */
+  at(x: number, y: number, slack: number): FieldPlace | null;
 };
 
 /**
@@ -43,7 +42,10 @@ export function solveStrip(
     const row = system.rowOf[unknown]!;
     return row >= 0 ? x[row]! : held[unknown]!;
   });
-  return { mesh, heads: at, unknowns: system.rows.n };
+  return {
+    unknowns: system.rows.n,
+    at: (px, py, within) => fieldPlaceAt(mesh, at, px, py, within),
+  };
 }
 
 /** Head of each unknown that lies on a held line; NaN for the others. */
@@ -138,25 +140,45 @@ function meanOf(held: Float64Array): number {
   return known.length === 0 ? 0 : known.reduce((sum, head) => sum + head, 0) / known.length;
 }
 
+/** Head at a place of a strip, and its gradient by working pixels. */
+export type FieldPlace = { readonly head: number; readonly gradient: readonly [number, number] };
+
 /**
  * Head at a place in a solved strip. A place that lies outside its triangles by up to `slack` pixels, as a point on a
  * traced boundary does, takes the head of the nearest place inside: nothing is extrapolated. Null where the field has
  * no head.
  */
-export function fieldHeadAt(field: StripField, x: number, y: number, slack: number): number | null {
-  const { mesh, heads } = field;
+function fieldPlaceAt(
+  mesh: StripMesh,
+  heads: Float64Array,
+  x: number,
+  y: number,
+  slack: number,
+): FieldPlace | null {
   let nearest = slack;
-  let best: number | null = null;
+  let best: FieldPlace | null = null;
   for (let t = 0; t < mesh.triangles.length; t += 3) {
     if (Number.isNaN(heads[t]! + heads[t + 1]! + heads[t + 2]!)) continue;
     const found = nearestInTriangle(mesh, t, x, y, nearest);
     if (found === null) continue;
     const [a, b, c] = found.parts;
-    best = a * heads[t]! + b * heads[t + 1]! + c * heads[t + 2]!;
+    best = {
+      head: a * heads[t]! + b * heads[t + 1]! + c * heads[t + 2]!,
+      gradient: gradientIn(mesh, heads, t),
+    };
     nearest = found.distance;
     if (nearest === 0) return best;
   }
   return best;
+}
+
+function gradientIn(mesh: StripMesh, heads: Float64Array, t: number): [number, number] {
+  const at = (k: number, axis: number) => mesh.xy[2 * mesh.triangles[t + k]! + axis]!;
+  const [ux, uy] = [at(1, 0) - at(0, 0), at(1, 1) - at(0, 1)];
+  const [vx, vy] = [at(2, 0) - at(0, 0), at(2, 1) - at(0, 1)];
+  const [du, dv] = [heads[t + 1]! - heads[t]!, heads[t + 2]! - heads[t]!];
+  const twice = ux * vy - uy * vx;
+  return twice === 0 ? [0, 0] : [(du * vy - dv * uy) / twice, (dv * ux - du * vx) / twice];
 }
 
 type Nearest = { readonly distance: number; readonly parts: readonly [number, number, number] };

@@ -1,37 +1,13 @@
-import { makeFinding } from '#shared/compute/findings.ts';
 import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
-import { distanceToRing, type Ring, ringContains } from '#shared/compute/geometry/polygon.ts';
-import { nearestOnPolyline, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
-import { liesAbovePhreatic } from '#shared/compute/net/above-phreatic.ts';
-import { type HandReading, readByHand, straddlesWall, stripAt } from '#shared/compute/net/hand-rule.ts';
-import { type HeadOfLine, headWhere, type NetHeads } from '#shared/compute/net/net-heads.ts';
+import { type LieOfPlace, lieOf } from '#shared/compute/net/lie-of-place.ts';
+import { questionReading } from '#shared/compute/net/point-findings.ts';
+import { explainFreeFace, explainReading } from '#shared/compute/net/point-words.ts';
 import { provisionalDoubt } from '#shared/compute/net/provisional-doubt.ts';
-import type { Strip } from '#shared/compute/net/strips.ts';
+import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
+import { type FieldAt, fieldAt, type HandAt, handAt } from '#shared/compute/net/two-readings.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
-import type { Finding, PointReading } from '#shared/contract/reading.ts';
-import { fixedText } from '#shared/text/number-text.ts';
-
-/** Everything a point is read against; shapes and `slack` in base-raster pixels. */
-export type ReadingGround = {
-  readonly map: SectionMap;
-  readonly strips: readonly Strip[];
-  readonly heads: NetHeads;
-  readonly walls: readonly Polyline[];
-  /** Closed impervious outlines inside which nothing flows. */
-  readonly bodies: readonly Ring[];
-  readonly phreaticLines: readonly Polyline[];
-  /** Faces and ground that bound the section from above. */
-  readonly faces: readonly Polyline[];
-  /** Boundaries along which the head is the elevation. */
-  readonly freeFaces: readonly Polyline[];
-  readonly slack: number;
-  readonly gammaW: number;
-  /** Unit of a head or elevation with its datum, for words: "m LD". */
-  readonly levelUnit: string;
-  readonly placeDoubt: number;
-  readonly unequal: boolean;
-};
+import type { PointReading } from '#shared/contract/reading.ts';
 
 /** A reading point on the sheet and in the section. */
 export type PlacedPoint = {
@@ -76,16 +52,19 @@ export function withholdPoint(point: PlacedPoint, code: string, text: string): P
     pressureHead: null,
     porePressure: null,
     porePressurePlusMinus: null,
+    byHand: null,
+    byField: null,
     explanation: text,
     findings: [],
   };
 }
 
 /**
- * Reads one point of a finished net: total head h by hand's rule (on a face of free outflow h = z), pressure head
- * h − z and pore pressure u = γw(h − z), never γw times a depth. Heads and elevations in the document's length unit,
- * pressure in γw's unit times it. Above the phreatic line there is no head and the pressure is 0; outside the net and
- * behind a wall there is no figure, only the reason.
+ * Reads one point of a finished net: total head h by the field between the two lines beside it (on a face of free
+ * outflow h = z), with hand's rule beside it as the explanation; pressure head h − z and pore pressure u = γw(h − z),
+ * never γw times a depth. Heads and elevations in the document's length unit, pressure in γw's unit times it. Above the
+ * phreatic line there is no head and the pressure is 0; outside the net and behind a wall there is no figure, only the
+ * reason. Where the field could not be solved the figure is the hand rule's, and a finding says so.
  */
 export function readPoint(point: PlacedPoint, ground: ReadingGround): PointReading {
   const { sheetAt, elevation } = point;
@@ -96,81 +75,40 @@ export function readPoint(point: PlacedPoint, ground: ReadingGround): PointReadi
       'The point has no place on this section. Check its coordinates and the known points.',
     );
   }
-  if (liesAbovePhreatic(sheetAt, ground.map.up, ground.phreaticLines, ground.faces, ground.slack)) {
-    return abovePhreatic(point);
-  }
-  if (isInsideBody(sheetAt, ground)) {
-    return withholdPoint(
-      point,
-      'acrossWall',
-      'The point lies inside an impervious body. No water flows there, and nothing is read.',
-    );
-  }
-  const strip = stripAt(ground.strips, sheetAt, ground.slack);
-  if (strip === null) {
-    return withholdPoint(
-      point,
-      'outsideNet',
-      'The point lies outside the traced net. Nothing is read beyond the lines.',
-    );
-  }
-  const hand = readByHand(strip, sheetAt, ground.walls, ground.slack);
-  if (hand === null) {
-    return withholdPoint(
-      point,
-      'acrossWall',
-      'A wall, or a maze of walls, lies between the point and its neighbouring lines. Check the boundary there.',
-    );
-  }
-  const before = ground.heads.byId.get(strip.before);
-  const after = ground.heads.byId.get(strip.after);
-  if (before === undefined || after === undefined) {
-    return withholdPoint(
-      point,
-      'linesOutOfOrder',
-      'The lines beside the point are not in order. Check the equipotentials there.',
-    );
-  }
-  return withFigures(point, sheetAt, elevation, ground, hand, before, after);
+  const lie = lieOf(sheetAt, ground);
+  if (lie.in === 'air') return abovePhreatic(point);
+  if (lie.in === 'nothing') return withholdPoint(point, lie.code, lie.text);
+  const hand = handAt(sheetAt, lie, ground);
+  if ('code' in hand) return withholdPoint(point, hand.code, hand.text);
+  const field = fieldAt(sheetAt, lie, ground);
+  if (field !== null && 'code' in field) return withholdPoint(point, field.code, field.text);
+  return withFigures({ point, sheetAt, elevation, lie, hand, field }, ground);
 }
 
-/** A point on the outline itself, to the accuracy of tracing, is read from outside: there the water presses. */
-function isInsideBody([x, y]: SheetPx, { bodies, slack }: ReadingGround): boolean {
-  return bodies.some((body) => ringContains(body, x, y) && distanceToRing(body, x, y) > slack);
-}
+type TwiceRead = {
+  readonly point: PlacedPoint;
+  readonly sheetAt: SheetPx;
+  readonly elevation: number;
+  readonly lie: Extract<LieOfPlace, { in: 'strip' }>;
+  readonly hand: HandAt;
+  readonly field: FieldAt | null;
+};
 
-function withFigures(
-  point: PlacedPoint,
-  sheetAt: SheetPx,
-  elevation: number,
-  ground: ReadingGround,
-  hand: HandReading,
-  before: HeadOfLine,
-  after: HeadOfLine,
-): PointReading {
-  const headBefore = headWhere(ground.heads, before, hand.strip.beforeShape, hand.beforeS);
-  const headAfter = headWhere(ground.heads, after, hand.strip.afterShape, hand.afterS);
-  const onFreeFace = ground.freeFaces.some(
-    (face) => nearestOnPolyline(face, sheetAt[0], sheetAt[1]).distance <= ground.slack,
-  );
-  const totalHead = onFreeFace ? elevation : headBefore + hand.fraction * (headAfter - headBefore);
-  const dropsLost = before.drops + hand.fraction * (after.drops - before.drops);
+function withFigures(read: TwiceRead, ground: ReadingGround): PointReading {
+  const { point, sheetAt, elevation, lie, hand, field } = read;
+  const { before, after, onFreeFace } = lie;
+  const { totalHead, dropsLost } = field ?? hand;
   const pressureHead = totalHead - elevation;
   const doubt = provisionalDoubt({
-    intervalHead: headAfter - headBefore,
-    intervalLength: (hand.toBefore + hand.toAfter) * ground.map.unitsPerPx,
+    intervalHead: hand.headAfter - hand.headBefore,
+    intervalLength: (hand.way.toBefore + hand.way.toAfter) * ground.map.unitsPerPx,
     placeDoubt: ground.placeDoubt,
     clicked: point.value.place.on === 'sheet',
   });
-  const figures = [
-    totalHead,
-    dropsLost,
-    pressureHead,
-    pressureHead * ground.gammaW,
-    doubt.head,
-    doubt.pressureHead,
-  ];
-  if (!figures.every((figure) => Number.isFinite(figure * ground.gammaW))) {
+  const figures = [totalHead, dropsLost, hand.totalHead, hand.dropsLost, pressureHead, doubt.head]
+    .concat(doubt.pressureHead, field?.gradient ?? [])
+    .map((figure) => figure * Math.max(1, ground.gammaW));
+  if (!figures.every((figure) => Number.isFinite(figure))) {
     return withholdPoint(
       point,
       'notFinite',
@@ -182,103 +120,29 @@ function withFigures(
     status: 'read',
     reason: null,
     dropsLost,
-    between: { before: before.id, after: after.id, fraction: hand.fraction },
+    between: { before: before.id, after: after.id, fraction: hand.way.fraction },
     totalHead,
     totalHeadPlusMinus: doubt.head,
     pressureHead,
     porePressure: ground.gammaW * pressureHead,
     porePressurePlusMinus: ground.gammaW * doubt.pressureHead,
+    byHand: { totalHead: hand.totalHead, dropsLost: hand.dropsLost },
+    byField: field && { ...field, gradient: [field.gradient[0], field.gradient[1]] },
     explanation: onFreeFace
-      ? `On the face of free outflow the total head is the elevation, ${fixedText(elevation, 2)} ${ground.levelUnit}.`
-      : explain(before, after, hand.fraction, headBefore, headAfter, totalHead, dropsLost, ground),
-    findings: [
-      ...negativePressure(point, pressureHead, sheetAt),
-      ...nearOpenEnd(point, sheetAt, hand),
-      ...onThinWall(point, sheetAt, hand, ground),
-    ],
+      ? explainFreeFace(elevation, ground)
+      : explainReading(before, after, hand, field, ground),
+    findings: questionReading(point.id, sheetAt, hand, field, pressureHead, ground),
   };
 }
 
-function explain(
-  before: HeadOfLine,
-  after: HeadOfLine,
-  fraction: number,
-  headBefore: number,
-  headAfter: number,
-  totalHead: number,
-  dropsLost: number,
-  { unequal, levelUnit }: ReadingGround,
-): string {
-  const part = fixedText(fraction, 2);
-  if (unequal) {
-    return `From ${before.label} (head ${fixedText(headBefore, 2)}) ${part} of the way to ${after.label} (head ${fixedText(headAfter, 2)}): total head ${fixedText(totalHead, 2)} ${levelUnit}.`;
-  }
-  const drops = Math.round(before.drops * 100) / 100;
-  const lead =
-    before.source === 'boundary'
-      ? `No drop lost at ${before.label}, then`
-      : `${drops} ${drops === 1 ? 'drop' : 'drops'} lost at ${before.label}, then`;
-  const span = after.drops - before.drops;
-  const of = Math.abs(span - 1) < 0.005 ? 'the drop' : `the ${Math.round(span * 100) / 100} drops`;
-  return `${lead} ${part} of ${of} from ${before.label} to ${after.label}: ${fixedText(dropsLost, 2)} drops lost, total head ${fixedText(totalHead, 2)} ${levelUnit}.`;
-}
-
 function abovePhreatic(point: PlacedPoint): PointReading {
-  const text = 'above the phreatic line, suction left out';
   return {
-    ...withholdPoint(point, 'abovePhreatic', text),
+    ...withholdPoint(point, 'abovePhreatic', 'above the phreatic line, suction left out'),
     status: 'abovePhreatic',
     porePressure: 0,
     explanation:
       'The point lies above the phreatic line. Suction is left out, and the pressure is given as 0.',
   };
-}
-
-/** Within a cell of an end that a mere straight join closes, the strip is not what the drawing says. */
-function nearOpenEnd(point: PlacedPoint, at: SheetPx, hand: HandReading): Finding[] {
-  const cell = hand.toBefore + hand.toAfter;
-  const near = hand.strip.ways.some((way) => {
-    const join = way.open ? polylineOf(way.points) : null;
-    return join !== null && nearestOnPolyline(join, at[0], at[1]).distance < cell;
-  });
-  if (!near) return [];
-  return [
-    makeFinding(
-      'note',
-      'nearOpenEnd',
-      'The point lies within a cell of an end at which no boundary is traced. Trace the boundary or the outermost flow line there.',
-      { cell: 'netCheck', entityIds: [point.id], at },
-    ),
-  ];
-}
-
-/** Head jumps across a thin wall, and the hand's tremor decides on which side of it such a point comes to lie. */
-function onThinWall(point: PlacedPoint, at: SheetPx, hand: HandReading, ground: ReadingGround): Finding[] {
-  if (!straddlesWall(ground.strips, hand.strip, at, ground.walls, ground.slack)) return [];
-  return [
-    makeFinding(
-      'question',
-      'onThinWall',
-      'The point lies on a thin wall, nearer than the tracing can tell its two sides apart, and the head differs from side to side. Move it clear of the wall, to the side that is meant.',
-      { cell: 'netCheck', entityIds: [point.id], at },
-    ),
-  ];
-}
-
-function negativePressure(point: PlacedPoint, pressureHead: number, at: SheetPx): Finding[] {
-  if (!(pressureHead < 0)) return [];
-  return [
-    makeFinding(
-      'question',
-      'negativePressure',
-      'The pressure is negative below the phreatic line. Check the lines, the levels and the elevation of the point.',
-      {
-        cell: 'netCheck',
-        entityIds: [point.id],
-        at,
-      },
-    ),
-  ];
 }
 
 function finiteOrNull(value: number | null): number | null {

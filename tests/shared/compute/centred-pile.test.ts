@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest';
-import { readField } from '#shared/compute/field/read-field.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { centredPileNet } from '#tests/support/exact-nets/centred-pile-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
@@ -49,7 +48,7 @@ describe('a floor with a pile under its middle, outlined on both sides of the pi
   it('has its field within 0.03 drop everywhere when the lines are exact', () => {
     const net = floor(9, 5);
     const readings = randomReadings(net, COUNT, 4);
-    readField(exactNetDocument(net, { pxPerUnit: 60, readings })).forEach(({ totalHead }, i) => {
+    readNet(exactNetDocument(net, { pxPerUnit: 60, readings })).points.forEach(({ totalHead }, i) => {
       expect((Math.abs(totalHead! - net.headAt(...readings[i]!.at)) * 9) / 6).toBeLessThan(0.03);
     });
   });

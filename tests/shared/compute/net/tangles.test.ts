@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest';
-import { readField } from '#shared/compute/field/read-field.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { similarityBackward } from '#shared/compute/similarity.ts';
 import type { FlowNetDocument, LineKind, SheetPoint, TracedLine } from '#shared/contract/document.ts';
@@ -72,11 +71,6 @@ describe('a line that crosses itself', { timeout: 10_000 }, () => {
       readings.map(() => ['withheld', null]),
     );
     expect(reading.points[0]?.reason?.text).toBe(`Net unfinished. ${found?.text}`);
-  });
-
-  it('is not read by the field either', () => {
-    const heads = readField(withPoints('phreaticLine', scribble(150, 3)));
-    expect(heads.every(({ totalHead }) => totalHead === null)).toBe(true);
   });
 
   it('may be a soil boundary, which bounds no flow', () => {

@@ -36,6 +36,8 @@ function point(name: string, changes: Partial<PointReading> = {}): PointReading 
     pressureHead: 12.64,
     porePressure: 124,
     porePressurePlusMinus: 1.5,
+    byHand: null,
+    byField: null,
     explanation: '',
     findings: [],
     ...changes,

@@ -1,0 +1,38 @@
+import { type StripField, solveStrip } from '#shared/compute/field/strip-field.ts';
+import type { HeadOfLine } from '#shared/compute/net/net-heads.ts';
+import { elevationAt } from '#shared/compute/net/potentials.ts';
+import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
+import type { Strip } from '#shared/compute/net/strips.ts';
+
+/** The solved field of a strip; null where it cannot be meshed or solved. */
+export type FieldOfStrip = (strip: Strip) => StripField | null;
+
+/** What the fields of the strips are solved from. */
+export type FieldGround = Pick<ReadingGround, 'map' | 'heads' | 'walls' | 'freeFaces' | 'slack'>;
+
+/** Solves a strip the first time it is asked for, and keeps it. */
+export function fieldsOnDemand(ground: FieldGround): FieldOfStrip {
+  const solved = new Map<Strip, StripField | null>();
+  return (strip) => {
+    const known = solved.get(strip);
+    if (known !== undefined) return known;
+    const field = solveOn(strip, ground);
+    solved.set(strip, field);
+    return field;
+  };
+}
+
+function solveOn(strip: Strip, ground: FieldGround): StripField | null {
+  const before = ground.heads.byId.get(strip.before);
+  const after = ground.heads.byId.get(strip.after);
+  if (before === undefined || after === undefined) return null;
+  const elevation = (x: number, y: number) => elevationAt(ground.map, x, y);
+  const headOn = (line: HeadOfLine) => (x: number, y: number) => line.head ?? elevation(x, y);
+  return solveStrip(
+    strip,
+    { before: headOn(before), after: headOn(after), free: elevation },
+    ground.walls,
+    ground.freeFaces,
+    ground.slack,
+  );
+}

@@ -1,0 +1,29 @@
+import type { FieldOfStrip } from '#shared/compute/field/strip-fields.ts';
+import type { Ring } from '#shared/compute/geometry/polygon.ts';
+import type { Polyline } from '#shared/compute/geometry/polyline.ts';
+import type { NetHeads } from '#shared/compute/net/net-heads.ts';
+import type { Strip } from '#shared/compute/net/strips.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+
+/** Everything a place is read against; shapes and `slack` in working pixels. */
+export type ReadingGround = {
+  readonly map: SectionMap;
+  readonly strips: readonly Strip[];
+  readonly heads: NetHeads;
+  readonly walls: readonly Polyline[];
+  /** Closed impervious outlines inside which nothing flows. */
+  readonly bodies: readonly Ring[];
+  readonly phreaticLines: readonly Polyline[];
+  /** Faces and ground that bound the section from above. */
+  readonly faces: readonly Polyline[];
+  /** Boundaries along which the head is the elevation. */
+  readonly freeFaces: readonly Polyline[];
+  /** The head between the two lines of a strip, solved the first time it is asked for. */
+  readonly fieldOf: FieldOfStrip;
+  readonly slack: number;
+  readonly gammaW: number;
+  /** Unit of a head or elevation with its datum, for words: "m LD". */
+  readonly levelUnit: string;
+  readonly placeDoubt: number;
+  readonly unequal: boolean;
+};
