@@ -23,8 +23,16 @@ export type CarrierGraph = {
   readonly twins: ReadonlyMap<Touch, Touch>;
 };
 
-/** A way along carriers: its points in order, its length, and where it ends on the goal. */
-export type CarrierWay = { readonly points: Pair[]; readonly length: number; readonly endS: number };
+/** The part of a way that runs along one carrier. */
+export type CarrierStretch = { readonly carrier: Carrier; readonly points: Pair[] };
+
+/** A way along carriers: its points in order, carrier by carrier too, its length, and where it ends on the goal. */
+export type CarrierWay = {
+  readonly points: Pair[];
+  readonly stretches: readonly CarrierStretch[];
+  readonly length: number;
+  readonly endS: number;
+};
 
 /**
  * Finds where carriers meet one another and the potential boundaries: crossings, and ends within `reach`. Shapes and
@@ -159,14 +167,16 @@ function firstFrom(along: readonly Touch[], s: number): number {
 
 /** The points of the way: one piece of each carrier from where it is entered to where it is left. */
 function wayTo({ stop, cost, endS }: Arrival, graph: CarrierGraph): CarrierWay {
-  const pieces: Pair[][] = [];
+  const stretches: CarrierStretch[] = [];
   let end = stop;
   for (let at: Stop | null = stop; at !== null; at = at.before) {
     if (at.before !== null && at.before.carrier === end.carrier) continue;
-    pieces.push(pieceAlong(graph.carriers.get(end.carrier)!.shape, at.s, end.s));
+    const carrier = graph.carriers.get(end.carrier)!;
+    stretches.push({ carrier, points: pieceAlong(carrier.shape, at.s, end.s) });
     if (at.before !== null) end = at.before;
   }
-  return { points: pieces.reverse().flat(), length: cost, endS };
+  stretches.reverse();
+  return { points: stretches.flatMap(({ points }) => points), stretches, length: cost, endS };
 }
 
 function isClosed(shape: Polyline): boolean {

@@ -47,13 +47,21 @@ export function countDrops(
   const headPerDrop = lost / stated;
   if (!Number.isFinite(headPerDrop) || !(headPerDrop > 0)) return { ...nothing, findings: [outOfBounds()] };
   const marks = marksOf(sequence, headwater, headPerDrop, stated);
-  const wrongs = disorder(sequence, marks, stated);
+  const ends: WayEnds = {
+    headwater,
+    headPerDrop,
+    from: 0,
+    to: stated,
+    fromLabel: 'the headwater',
+    toLabel: 'the outlet',
+  };
+  const wrongs = disorder(sequence, marks, ends);
   if (wrongs.length > 0) return { ...nothing, findings: wrongs };
   const typedHeadsFit = marks.every((mark) => mark.source !== 'typedHead' || isNearWhole(mark.drops ?? 0));
-  const counted = fillBetween(sequence, marks, stated);
+  const counted = fillBetween(sequence, marks, ends);
   if ('findings' in counted) return { ...nothing, findings: counted.findings };
   if (!typedHeadsFit && !stepsFit(stated, sequence.length, true)) {
-    return { ...nothing, findings: [doesNotFit(sequence, -1, sequence.length, sequence.length, stated)] };
+    return { ...nothing, findings: [doesNotFit(sequence, -1, sequence.length, stated, ends)] };
   }
   const lines = sequence.map((line, i): CountedLine => {
     const drops = counted.drops[i]!;
@@ -65,7 +73,45 @@ export function countDrops(
   return { lines, tracedDrops, headPerDrop, unequal, findings: [] };
 }
 
-type Mark = { drops: number | null; source: 'counted' | 'typedDrops' | 'typedHead' };
+/** The ends of one way of the water, in drops lost and in words, and what a drop is worth. */
+export type WayEnds = {
+  readonly headwater: number;
+  readonly headPerDrop: number;
+  readonly from: number;
+  readonly to: number;
+  readonly fromLabel: string;
+  readonly toLabel: string;
+};
+
+/**
+ * Counts the lines of a further way of the water, in the order of the flow, between lines that are `known` already, by
+ * the head per drop of the net. The way may begin and end at part drops. Returns the lines that were not known, or the
+ * findings that say where the count does not come out.
+ */
+export function countBetween(
+  sequence: readonly NetLine[],
+  known: ReadonlyMap<string, CountedLine>,
+  ends: WayEnds,
+): { lines: CountedLine[]; findings: readonly Finding[] } {
+  const typed = marksOf(sequence, ends.headwater, ends.headPerDrop, ends.to);
+  const marks = typed.map((mark, i): Mark => {
+    const line = known.get(sequence[i]!.id);
+    return line === undefined ? mark : { drops: line.drops, source: line.source };
+  });
+  const wrongs = disorder(sequence, marks, ends);
+  if (wrongs.length > 0) return { lines: [], findings: wrongs };
+  const counted = fillBetween(sequence, marks, ends);
+  if ('findings' in counted) return { lines: [], findings: counted.findings };
+  const lines = sequence.map(({ id, value }, i): CountedLine => {
+    const { source } = marks[i]!;
+    const drops = counted.drops[i]!;
+    const head = source === 'typedHead' ? value.head! : ends.headwater - drops * ends.headPerDrop;
+    return { id, drops, head, source };
+  });
+  return { lines: lines.filter(({ id }) => !known.has(id)), findings: [] };
+}
+
+type Mark = { drops: number | null; source: LineReading['source'] };
 
 function marksOf(
   sequence: readonly NetLine[],
@@ -90,18 +136,18 @@ function isNearWhole(drops: number): boolean {
 }
 
 /** Typed values must fall along the flow, and lie between headwater and outlet. */
-function disorder(sequence: readonly NetLine[], marks: readonly Mark[], stated: number): Finding[] {
+function disorder(sequence: readonly NetLine[], marks: readonly Mark[], ends: WayEnds): Finding[] {
   const findings: Finding[] = [];
-  let before = 0;
+  let before = ends.from;
   sequence.forEach((line, i) => {
     const drops = marks[i]!.drops;
     if (drops === null) return;
-    if (!(drops > before) || !(drops < stated)) {
+    if (!(drops > before) || !(drops < ends.to)) {
       findings.push(
         makeFinding(
           'wrong',
           'typedOutOfOrder',
-          `The value typed at ${nameOf(line, i)} does not fit its place in the flow: heads must fall from the headwater to the outlet. Correct the value or the line.`,
+          `The value typed at ${nameOf(line, i)} does not fit its place in the flow: heads must fall from ${ends.fromLabel} to ${ends.toLabel}. Correct the value or the line.`,
           { cell: 'drops', entityIds: [line.id], at: line.value.points[0] ?? null },
         ),
       );
@@ -115,19 +161,20 @@ function disorder(sequence: readonly NetLine[], marks: readonly Mark[], stated: 
 function fillBetween(
   sequence: readonly NetLine[],
   marks: readonly Mark[],
-  stated: number,
+  ends: WayEnds,
 ): { drops: number[] } | { findings: Finding[] } {
   const drops: number[] = [];
-  let known = 0;
+  // The first step of a way that begins within a drop is what is left of that drop.
+  let known = Math.floor(ends.from + SAME_DROP);
   let knownAt = -1;
   for (let i = 0; i <= sequence.length; i += 1) {
     const isOutlet = i === sequence.length;
-    const here = isOutlet ? stated : marks[i]!.drops;
+    const here = isOutlet ? ends.to : marks[i]!.drops;
     if (here === null) continue;
     const between = i - knownAt - 1;
     const steps = here - known;
     if ((between > 0 || sequence.length === 0) && !stepsFit(steps, between, isOutlet)) {
-      return { findings: [doesNotFit(sequence, knownAt, i, between, steps)] };
+      return { findings: [doesNotFit(sequence, knownAt, i, steps, ends)] };
     }
     for (let k = 1; k <= between; k += 1) drops.push(known + k);
     if (!isOutlet) drops.push(here);
@@ -207,16 +254,16 @@ function doesNotFit(
   sequence: readonly NetLine[],
   from: number,
   to: number,
-  between: number,
   steps: number,
+  ends: WayEnds,
 ): Finding {
-  const start = from === -1 ? 'the headwater' : nameOf(sequence[from], from);
-  const end = to === sequence.length ? 'the outlet' : nameOf(sequence[to], to);
+  const start = from === -1 ? ends.fromLabel : nameOf(sequence[from], from);
+  const end = to === sequence.length ? ends.toLabel : nameOf(sequence[to], to);
   const ids = [sequence[from]?.id, sequence[to]?.id].filter((id) => id !== undefined);
   return makeFinding(
     'missing',
     'countDisagrees',
-    `Between ${start} and ${end} the traced lines make ${between + 1} drops, the count stated or typed there makes ${Math.round(steps * 1000) / 1000}. Trace the missing lines, take away the surplus ones, or correct the count.`,
+    `Between ${start} and ${end} the traced lines make ${to - from} drops, the count stated or typed there makes ${Math.round(steps * 1000) / 1000}. Trace the missing lines, take away the surplus ones, or correct the count.`,
     { cell: 'drops', entityIds: ids },
   );
 }

@@ -10,8 +10,16 @@ import {
 } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
-/** A line on which equipotentials may end: the real boundaries, and flow lines where no boundary is traced. */
-export type Carrier = { readonly id: string; readonly shape: Polyline; readonly real: boolean };
+/**
+ * A line on which equipotentials may end: the real boundaries, and flow lines where no boundary is traced. `held`: a
+ * boundary with one head, on which an equipotential of that head may end beside the parting of the flow.
+ */
+export type Carrier = {
+  readonly id: string;
+  readonly shape: Polyline;
+  readonly real: boolean;
+  readonly held?: true;
+};
 
 /** Where an equipotential ends on a carrier: distance along the carrier in pixels, the place, real boundary or not. */
 export type Foot = { readonly carrier: Carrier; readonly s: number; readonly at: Pair };
@@ -21,8 +29,8 @@ export type FootedLine = { readonly shape: Polyline; readonly start: Foot | null
 
 /**
  * Carries an equipotential to the boundaries at which it ends: a small gap is bridged, a small overshoot cut off.
- * All in base-raster pixels; `reach` is the greatest gap or overshoot taken for a tracing error. A real boundary
- * within reach is preferred to a flow line. An end with nothing in reach stays as traced, without a foot.
+ * All in base-raster pixels; `reach` is the greatest gap or overshoot taken for a tracing error. A boundary
+ * that no flow crosses is preferred to one with a head, and that to a flow line. An end with nothing in reach stays as traced, without a foot.
  */
 export function carryToFeet(line: Polyline, carriers: readonly Carrier[], reach: number): FootedLine {
   const near = Math.min(reach, 0.25 * lengthOf(line));
@@ -45,9 +53,13 @@ function footAt(
   carriers: readonly Carrier[],
   near: number,
 ): FoundFoot | null {
-  for (const real of [true, false]) {
-    const found = carriers
-      .filter((carrier) => carrier.real === real)
+  const turns = [
+    carriers.filter(({ real, held }) => real && !held),
+    carriers.filter(({ held }) => held),
+    carriers.filter(({ real }) => !real),
+  ];
+  for (const carriersInTurn of turns) {
+    const found = carriersInTurn
       .map((carrier) => footOn(line, which, carrier, near))
       .filter((foot) => foot !== null)
       .sort((a, b) => a.error - b.error)[0];

@@ -57,8 +57,11 @@ export function modelNet(
   );
   const heads = headLines(equipotentials, potentials);
   const links = neighbourLinks(heads, shapesOf(walls), shapesOf(flowLines));
-  const order = orderAlongFlow(heads, links);
-  const strips = stripsOf(order, equipotentials, potentials, carrierGraph(carriers, potentials, reach));
+  const levels = new Map(potentials.map(({ id, outHead }) => [id, outHead]));
+  const order = orderAlongFlow(heads, links, levels);
+  const strips = stripsOf(order, equipotentials, potentials, (more) =>
+    carrierGraph([...carriers, ...more], potentials, reach),
+  );
   return {
     lines,
     equipotentials,
@@ -86,17 +89,23 @@ function shapesOf(lines: readonly NetLine[]): Polyline[] {
   return lines.map((line) => line.shape);
 }
 
-/** Faces along which the head is the elevation carry feet too: equipotentials end on them. */
+/**
+ * Faces along which the head is the elevation carry feet too: equipotentials end on them. So do boundaries of a head
+ * between the highest and the lowest, which the flow passes beside.
+ */
 function carriersOf(
   walls: readonly NetLine[],
   flowLines: readonly NetLine[],
   potentials: readonly Potential[],
 ): Carrier[] {
+  const outlets = potentials.filter(({ role }) => role === 'outlet');
+  const lowest = Math.min(...outlets.map(({ outHead }) => outHead));
   return [
     ...walls.map((line) => ({ id: line.id, shape: line.shape, real: true })),
-    ...potentials
-      .filter((potential) => potential.level === null)
-      .map((potential) => ({ id: potential.id, shape: potential.shape, real: true })),
+    ...outlets.filter(({ level }) => level === null).map(({ id, shape }) => ({ id, shape, real: true })),
+    ...outlets
+      .filter(({ level, outHead }) => level !== null && outHead > lowest)
+      .map(({ id, shape }): Carrier => ({ id, shape, real: true, held: true })),
     ...flowLines.map((line) => ({ id: line.id, shape: line.shape, real: false })),
   ];
 }
@@ -116,7 +125,7 @@ function stripsOf(
   order: FlowOrder,
   equipotentials: readonly Equipotential[],
   potentials: readonly Potential[],
-  graph: CarrierGraph,
+  graphWith: (more: readonly Carrier[]) => CarrierGraph,
 ): Strip[] {
   const stripLines = new Map<string, StripLine>([
     ...equipotentials.map(({ id, footed }) => [id, { id, ...footed, isBoundary: false }] as const),
@@ -124,17 +133,19 @@ function stripsOf(
       ({ id, shape }) => [id, { id, shape, start: null, end: null, isBoundary: true }] as const,
     ),
   ]);
+  const plain = graphWith([]);
   return order.pairs
     .map((pair) => {
-      const { before, after } = pair;
-      const others = equipotentials.filter(({ id }) => id !== before && id !== after);
-      return stripBetween(
-        stripLines.get(before)!,
-        stripLines.get(after)!,
-        pair,
-        graph,
-        others.map(({ id }) => stripLines.get(id)!),
-      );
+      const lines = equipotentials.filter(({ id }) => id !== pair.before && id !== pair.after);
+      const [beside, others] = [true, false].map((isBeside) =>
+        lines.filter(({ id }) => pair.beside.includes(id) === isBeside).map(({ id }) => stripLines.get(id)!),
+      ) as [StripLine[], StripLine[]];
+      // Where the flow parts, the ways from line to line run along the lines beside.
+      const graph =
+        beside.length === 0
+          ? plain
+          : graphWith(beside.map(({ id, shape }) => ({ id, shape, real: true, held: true })));
+      return stripBetween(stripLines.get(pair.before)!, stripLines.get(pair.after)!, pair, graph, others);
     })
     .filter((strip) => strip !== null);
 }
@@ -174,8 +185,8 @@ function orderFindings(
     ),
     ...about(
       'sideBySide',
-      'Two equipotentials follow on the same line. Trace them as one line, or say their heads.',
-      sideBySide(order),
+      'Two equipotentials lie side by side between the same lines, as the pieces of one do. Join them into one line, or correct the one that is out of place.',
+      order.sideBySide,
     ),
     ...(reached ? leftOut(order, equipotentials, potentials) : []),
     ...(reached || order.deadEnds.length > 0
@@ -194,20 +205,26 @@ function orderFindings(
 }
 
 /**
- * Drains and faces of free outflow that take no part though the flow reaches another outlet: a net drawn without the
- * drain holds for a section without it. One along which equipotentials end does take part.
+ * Drains, faces of free outflow and waters at another level that take no part though the flow reaches another outlet: a
+ * net drawn without the drain holds for a section without it. One along which equipotentials end does take part.
  */
 function leftOut(
   order: FlowOrder,
   equipotentials: readonly Equipotential[],
   potentials: readonly Potential[],
 ): Finding[] {
+  const lowest = Math.min(
+    ...potentials.filter(({ id }) => order.outlets.includes(id)).map(({ outHead }) => outHead),
+  );
   const bearsFoot = (id: string) =>
     equipotentials.some(({ footed }) => footed.start?.carrier.id === id || footed.end?.carrier.id === id);
   return potentials
     .filter(
-      ({ id, role, line }) =>
-        role === 'outlet' && line.kind !== 'submergedFace' && !order.place.has(id) && !bearsFoot(id),
+      ({ id, role, line, outHead }) =>
+        role === 'outlet' &&
+        (line.kind !== 'submergedFace' || outHead !== lowest) &&
+        !order.place.has(id) &&
+        !bearsFoot(id),
     )
     .map(({ members, label, line }) =>
       makeFinding(
@@ -217,11 +234,4 @@ function leftOut(
         { cell: 'outlet', entityIds: members, at: line.value.points[0] ?? null },
       ),
     );
-}
-
-/** Equipotentials that share their place in the order with another one. */
-function sideBySide(order: FlowOrder): string[] {
-  return order.sequence.filter((id) =>
-    order.sequence.some((other) => other !== id && order.place.get(other) === order.place.get(id)),
-  );
 }

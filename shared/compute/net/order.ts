@@ -1,89 +1,108 @@
-import type { HeadLine, NeighbourLink, Side } from '#shared/compute/net/neighbours.ts';
+import { type FlowPath, flowPaths } from '#shared/compute/net/flow-paths.ts';
+import type { HeadLine, NeighbourLink } from '#shared/compute/net/neighbours.ts';
+import { type FlowRegion, regionsOf } from '#shared/compute/net/regions.ts';
+import { type Walk, walkRegions } from '#shared/compute/net/walk-regions.ts';
 
 /** Two neighbouring head lines with the flow running from `before` to `after`. */
 export type OrderedPair = {
   readonly before: string;
   readonly after: string;
   readonly sameDirection: boolean;
+  /** Further equipotentials on the outline of the ground between the two, where the flow parts or joins. */
+  readonly beside: readonly string[];
 };
 
 export type FlowOrder = {
   /** Place of each line that the flow reaches: 0 for the headwater boundaries, then 1, 2, … along the flow. */
-  readonly place: Map<string, number>;
+  readonly place: ReadonlyMap<string, number>;
+  /** One pair for each stretch of ground between head lines. */
   readonly pairs: readonly OrderedPair[];
-  /** Equipotentials in the order in which the flow meets them. */
+  /** Ways of the water from a boundary that gives it to one that takes it; the first leads to the lowest outlet. */
+  readonly paths: readonly FlowPath[];
+  /** Boundaries that the flow passes beside, each with the last line before it; null when there is none. */
+  readonly passed: ReadonlyArray<{ readonly boundary: string; readonly after: string | null }>;
+  /** Equipotentials in the order in which the flow meets them, those of the first path first. */
   readonly sequence: readonly string[];
   /** Equipotentials that the flow from the headwater does not reach. */
   readonly unordered: readonly string[];
   /** Equipotentials from which the flow goes no further. */
   readonly deadEnds: readonly string[];
+  /** Equipotentials that part the same two stretches of ground, as the pieces of one line do. */
+  readonly sideBySide: readonly string[];
   /** Outlets that the flow reaches. */
   readonly outlets: readonly string[];
 };
 
 /**
- * Orders head lines along the flow, from the headwater boundaries to the outlets, by stepping from neighbour to
- * neighbour: a line entered on one side is left by the other. Neither the order of drawing nor the direction of a line
- * matters. Lines that cannot be reached are returned as `unordered`, never guessed.
+ * Orders head lines along the flow, from the headwater boundaries to the outlets. Each equipotential parts the ground in
+ * two, so that the stretches of ground between the lines hang together as a tree, with the boundaries at its ends: the
+ * order along the flow is the way through it, and it forks where the water parts. Neither the order of drawing nor the
+ * direction of a line matters. Lines that cannot be reached are returned as `unordered`, never guessed. `levels`: head
+ * of each potential boundary, any one unit. Own derivation.
  */
-export function orderAlongFlow(heads: readonly HeadLine[], links: readonly NeighbourLink[]): FlowOrder {
-  const byId = new Map(heads.map((line) => [line.id, line]));
-  const place = new Map<string, number>();
-  const pairs: OrderedPair[] = [];
-  const sequence: string[] = [];
-  let front: Array<{ id: string; leaveBy: Side | null }> = heads
-    .filter((line) => line.role === 'headwater')
-    .map((line) => ({ id: line.id, leaveBy: null }));
-  for (const { id } of front) place.set(id, 0);
-  for (let step = 1; front.length > 0; step += 1) {
-    const next = new Map<string, Side | null>();
-    for (const { id, leaveBy } of front) {
-      for (const { to, enterBy, sameDirection } of onward(leaving(id, leaveBy, links), byId)) {
-        const isOutlet = byId.get(to)!.role === 'outlet';
-        if (!isOutlet && (place.get(to) ?? step) < step) continue;
-        pairs.push({ before: id, after: to, sameDirection });
-        if (!isOutlet && place.has(to)) continue;
-        place.set(to, step);
-        if (isOutlet) continue;
-        sequence.push(to);
-        next.set(to, enterBy === 0 ? 1 : 0);
-      }
-    }
-    front = [...next].map(([id, leaveBy]) => ({ id, leaveBy }));
-  }
+export function orderAlongFlow(
+  heads: readonly HeadLine[],
+  links: readonly NeighbourLink[],
+  levels: ReadonlyMap<string, number>,
+): FlowOrder {
+  const regions = regionsOf(heads, links);
+  const walk = walkRegions(regions, heads, levels);
+  const { paths, passed } = flowPaths(walk, heads, levels);
+  const reached = new Set(paths.flatMap(({ lines }) => lines));
+  const sequence = [...reached];
   const equipotentials = heads.filter((line) => line.role === 'equipotential').map((line) => line.id);
+  const met = new Set([...paths.map(({ outlet }) => outlet), ...passed.map(({ boundary }) => boundary)]);
   return {
-    place,
-    pairs,
+    place: placesOf(walk, heads, met),
+    pairs: pairsOf(walk, paths, links, heads),
+    paths,
+    passed,
     sequence,
-    unordered: equipotentials.filter((id) => !place.has(id)),
-    deadEnds: sequence.filter((id) => !pairs.some((pair) => pair.before === id)),
-    outlets: heads.filter((line) => line.role === 'outlet' && place.has(line.id)).map((line) => line.id),
+    unordered: equipotentials.filter((id) => !walk.place.has(id)),
+    deadEnds: equipotentials.filter((id) => walk.ends.has(id) && !reached.has(id) && !walk.loops.has(id)),
+    sideBySide: equipotentials.filter((id) => walk.loops.has(id)),
+    outlets: heads.filter((line) => line.role === 'outlet' && met.has(line.id)).map((line) => line.id),
   };
 }
 
-/**
- * The steps that lead on. A face of free outflow runs along the ends of many lines; only the last of them, from which no
- * other line follows, gives its water to it.
- */
-function onward(steps: readonly Step[], byId: ReadonlyMap<string, HeadLine>): Step[] {
-  const lines = steps.map((step) => ({ step, line: byId.get(step.to)! }));
-  const followed = lines.some(({ line }) => line.role === 'equipotential');
-  return lines
-    .filter(({ line }) => line.role !== 'headwater' && !(followed && line.varies))
-    .map(({ step }) => step);
+function placesOf(walk: Walk, heads: readonly HeadLine[], met: ReadonlySet<string>): Map<string, number> {
+  const place = new Map(walk.place);
+  for (const { id, role } of heads) {
+    if (role === 'headwater') place.set(id, 0);
+    else if (role === 'outlet' && met.has(id)) place.set(id, walk.depth + 1);
+  }
+  return place;
 }
 
-type Step = { to: string; enterBy: Side; sameDirection: boolean };
+/** For each region the two head lines between which the flow crosses it, by the first path that does. */
+function pairsOf(
+  walk: Walk,
+  paths: readonly FlowPath[],
+  links: readonly NeighbourLink[],
+  heads: readonly HeadLine[],
+): OrderedPair[] {
+  const varies = new Set(heads.filter((line) => line.varies).map((line) => line.id));
+  const steps = paths.flatMap(({ source, lines, outlet }) => {
+    const stops = [source, ...lines, outlet];
+    return stops.slice(1).map((after, i) => ({ before: stops[i]!, after }));
+  });
+  return walk.regions.flatMap((region): OrderedPair[] => {
+    const here = steps.filter((step) => bounds(region, step.before) && bounds(region, step.after));
+    const step = here.find(({ after }) => !varies.has(after)) ?? here[0];
+    if (step === undefined) return [];
+    const beside = region.sides.map(({ id }) => id).filter((id) => id !== step.before && id !== step.after);
+    return [{ ...step, sameDirection: drawnAlike(step.before, step.after, region, links), beside }];
+  });
+}
 
-function leaving(id: string, leaveBy: Side | null, links: readonly NeighbourLink[]): Step[] {
-  const steps: Step[] = [];
-  for (const link of links) {
-    if (link.a === id && (leaveBy === null || link.sideA === leaveBy)) {
-      steps.push({ to: link.b, enterBy: link.sideB, sameDirection: link.sameDirection });
-    } else if (link.b === id && (leaveBy === null || link.sideB === leaveBy)) {
-      steps.push({ to: link.a, enterBy: link.sideA, sameDirection: link.sameDirection });
-    }
-  }
-  return steps;
+function bounds(region: FlowRegion, id: string): boolean {
+  return region.sides.some((side) => side.id === id) || region.boundaries.includes(id);
+}
+
+/** True when two lines are drawn in the same direction across the flow: with the region on different hands. */
+function drawnAlike(a: string, b: string, region: FlowRegion, links: readonly NeighbourLink[]): boolean {
+  const link = links.find((each) => (each.a === a && each.b === b) || (each.a === b && each.b === a));
+  if (link !== undefined) return link.sameDirection;
+  const sideOf = (id: string) => region.sides.find((side) => side.id === id)?.side ?? null;
+  return sideOf(a) !== sideOf(b);
 }

@@ -33,8 +33,10 @@ const LEVEL_PART = 0.02;
 
 /**
  * The potential boundaries among the traced lines, each with its own head: a submerged face the level of the water
- * on it (clipped at the waterline where it sticks out), an empty drain and a face of free outflow the elevation
- * along them, a drain under pressure its entered head. Heads and elevations are in the document's length unit;
+ * on it (clipped at the waterline where it sticks out), the typed one where it has a water of its own, an empty drain
+ * and a face of free outflow the elevation along them, a drain under pressure its entered head. The highest of the
+ * headwater's faces and of those with a water of their own gives the water; every other boundary takes part as an
+ * outlet, which may give water to a lower one. Heads and elevations are in the document's length unit;
  * `accuracyPx` is the tracing accuracy in pixels, below which a difference of elevation means nothing.
  */
 export function potentialsOf(
@@ -54,7 +56,21 @@ export function potentialsOf(
     if ('id' in found) all.push(found);
     else findings.push(found.finding);
   }
-  return { all, findings: [...onceEach(findings), ...missingSides(marked, water)] };
+  return { all: withRoles(all), findings: [...onceEach(findings), ...missingSides(marked, water)] };
+}
+
+/** The highest level of a face that gives water is the headwater of the net; lower ones are met along the flow. */
+function withRoles(all: readonly Potential[]): Potential[] {
+  const givers = all.filter(({ line }) => line.kind === 'submergedFace' && mayGive(line));
+  const top = Math.max(...givers.map(({ level }) => level ?? Number.NEGATIVE_INFINITY));
+  return all.map((potential) => ({
+    ...potential,
+    role: givers.includes(potential) && potential.level === top ? 'headwater' : 'outlet',
+  }));
+}
+
+function mayGive({ value }: NetLine): boolean {
+  return value.water === 'headwater' || value.head !== null;
 }
 
 /** A level that is missing is asked for once, however many faces want it. */
@@ -80,44 +96,61 @@ function submerged(
   water: WaterLevels,
   accuracyPx: number,
 ): Potential | { finding: Finding } {
-  const role = line.value.water === 'tailwater' ? 'outlet' : 'headwater';
-  if (line.value.water === null) {
-    return problem(
-      line,
-      'missing',
-      'faceWithoutWater',
-      'Say whether the submerged face carries the headwater or the tailwater.',
-    );
-  }
-  const level = line.value.water === 'headwater' ? water.headwater : water.tailwater;
-  if (level === null) {
-    return problem(
-      line,
-      'missing',
-      `${line.value.water}Missing`,
-      `Type the ${line.value.water} level of this load case.`,
-    );
-  }
-  const slack = 2 * accuracyPx * map.unitsPerPx;
+  const level = levelOn(line, water);
+  if (typeof level !== 'number') return level;
+  const slack = 2 * accuracyPx * map.elevationPerPx;
   const shape = clipAtLevel(line.shape, (x, y) => elevationAt(map, x, y), level + slack);
   if (shape === null) {
     return problem(
       line,
       'wrong',
       'faceAboveWater',
-      `The face marked as submerged lies wholly above the ${line.value.water}. Check the level and the known points.`,
+      `The face marked as submerged lies wholly above ${waterOn(line)}. Check the level and the known points.`,
     );
   }
   return {
     id: line.id,
     members: [line.id],
     line,
-    role,
+    role: 'outlet',
     shape,
     level,
     outHead: level,
-    label: `the ${line.value.water} boundary`,
+    label:
+      nameOf(line) ??
+      (line.value.head === null ? `the ${line.value.water} boundary` : 'the boundary of a water of its own'),
   };
+}
+
+/** Level of the water on a submerged face, or what has to be said first. */
+function levelOn(line: NetLine, water: WaterLevels): number | { finding: Finding } {
+  if (line.value.head !== null) return line.value.head;
+  if (line.value.water === null) {
+    return problem(
+      line,
+      'missing',
+      'faceWithoutWater',
+      'Say whether the submerged face carries the headwater or the tailwater, or type the level of its own water.',
+    );
+  }
+  return (
+    water[line.value.water] ??
+    problem(
+      line,
+      'missing',
+      `${line.value.water}Missing`,
+      `Type the ${line.value.water} level of this load case.`,
+    )
+  );
+}
+
+function waterOn({ value }: NetLine): string {
+  return value.head === null ? `the ${value.water}` : 'the level typed for its water';
+}
+
+function nameOf(line: NetLine): string | null {
+  const name = line.value.name.trim();
+  return name === '' ? null : name;
 }
 
 function freeOrHeld(
@@ -145,7 +178,7 @@ function freeOrHeld(
     );
   }
   if (held !== null) {
-    return held < low - 6 * accuracyPx * map.unitsPerPx
+    return held < low - 6 * accuracyPx * map.elevationPerPx
       ? problem(
           line,
           'wrong',
@@ -156,7 +189,7 @@ function freeOrHeld(
   }
   const allowed = Math.max(
     LEVEL_PART * Math.abs((headwater ?? high) - mean),
-    6 * accuracyPx * map.unitsPerPx,
+    6 * accuracyPx * map.elevationPerPx,
   );
   return high - low <= allowed
     ? { ...base, level: mean, outHead: mean }
@@ -164,8 +197,7 @@ function freeOrHeld(
 }
 
 function labelOf(line: NetLine): string {
-  if (line.value.name.trim() !== '') return line.value.name.trim();
-  return line.kind === 'drain' ? 'the drain' : 'the outflow face';
+  return nameOf(line) ?? (line.kind === 'drain' ? 'the drain' : 'the outflow face');
 }
 
 function elevationsAlong(shape: Polyline, map: SectionMap): { low: number; high: number; mean: number } {
@@ -185,11 +217,12 @@ function elevationsAlong(shape: Polyline, map: SectionMap): { low: number; high:
 
 function missingSides(marked: readonly NetLine[], water: WaterLevels): Finding[] {
   const findings: Finding[] = [];
-  const hasLine = (wanted: string | null, kinds: readonly string[]) =>
-    marked.some(
-      (line) => kinds.includes(line.kind) && (line.kind !== 'submergedFace' || line.value.water === wanted),
-    );
-  if (!hasLine('headwater', ['submergedFace'])) {
+  const faces = marked.filter((line) => line.kind === 'submergedFace');
+  const ownWaters = faces.filter(({ value }) => value.head !== null).length;
+  const carries = (which: 'headwater' | 'tailwater') => faces.some(({ value }) => value.water === which);
+  const givesWater = carries('headwater') || ownWaters > 0;
+  const takesWater = carries('tailwater') || marked.length > faces.length || ownWaters > 1;
+  if (!givesWater) {
     findings.push(
       makeFinding(
         'missing',
@@ -201,7 +234,7 @@ function missingSides(marked: readonly NetLine[], water: WaterLevels): Finding[]
       ),
     );
   }
-  if (!hasLine('tailwater', ['submergedFace', 'drain', 'outflowFace'])) {
+  if (!takesWater && !(carries('headwater') && ownWaters > 0)) {
     findings.push(
       makeFinding(
         'missing',
@@ -213,7 +246,7 @@ function missingSides(marked: readonly NetLine[], water: WaterLevels): Finding[]
       ),
     );
   }
-  if (water.headwater === null && !hasLine('headwater', ['submergedFace'])) {
+  if (water.headwater === null && !givesWater) {
     findings.push(
       makeFinding('missing', 'headwaterMissing', 'Type the headwater level of this load case.', {
         cell: 'headwater',

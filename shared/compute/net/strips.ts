@@ -8,7 +8,7 @@ import {
   polylineOf,
 } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
-import { type CarrierGraph, wayAlong } from '#shared/compute/net/carrier-graph.ts';
+import { type CarrierGraph, type CarrierStretch, wayAlong } from '#shared/compute/net/carrier-graph.ts';
 import type { Foot } from '#shared/compute/net/feet.ts';
 import type { OrderedPair } from '#shared/compute/net/order.ts';
 
@@ -34,6 +34,11 @@ export type Strip = {
   readonly ring: Ring;
   /** How the two ends are closed, each from the line before to the line after, both lines' ends included. */
   readonly ways: ReadonlyArray<{ readonly points: readonly Pair[]; readonly open: boolean }>;
+  /**
+   * Parts of the ways along which a head is held: a boundary of its own head that the flow passes beside, or a further
+   * equipotential where the flow parts. None in most strips.
+   */
+  readonly held: ReadonlyArray<{ readonly id: string; readonly shape: Polyline }>;
 };
 
 /** The longest way along carriers that still closes a strip, in lengths of its longer line. */
@@ -88,7 +93,11 @@ function outlined(before: StripLine, far: StripLine, graph: CarrierGraph, limit:
     open: closing.open,
   });
   const ways = [between(start, 0, 0), between(end, lengthOf(beforeShape), lengthOf(afterShape))];
-  return { before: before.id, after: far.id, beforeShape, afterShape, ring, ways };
+  const held = [...start.stretches, ...end.stretches].flatMap(({ carrier, points }) => {
+    const shape = carrier.held ? polylineOf(points) : null;
+    return shape === null ? [] : [{ id: carrier.id, shape }];
+  });
+  return { before: before.id, after: far.id, beforeShape, afterShape, ring, ways, held };
 }
 
 function reversedLine(line: StripLine): StripLine {
@@ -101,7 +110,13 @@ function pointsOf(shape: Polyline): Pair[] {
 }
 
 /** How one end is closed: points from `before` to `after`, and where on each line it begins and ends. */
-type Closing = { points: Pair[]; beforeS: number | null; afterS: number | null; open: boolean };
+type Closing = {
+  points: Pair[];
+  stretches: readonly CarrierStretch[];
+  beforeS: number | null;
+  afterS: number | null;
+  open: boolean;
+};
 
 function closingWay(
   before: StripLine,
@@ -119,7 +134,8 @@ function closingWay(
       { line: footAfter.carrier.id, s: footAfter.s },
       limit,
     );
-    if (way) return { points: way.points, beforeS: null, afterS: null, open: false };
+    if (way)
+      return { points: way.points, stretches: way.stretches, beforeS: null, afterS: null, open: false };
   }
   if (footAfter && before.isBoundary) {
     const way = wayAlong(
@@ -128,7 +144,10 @@ function closingWay(
       { line: before.id, s: null },
       limit,
     );
-    if (way) return { points: way.points.reverse(), beforeS: way.endS, afterS: null, open: false };
+    if (way) {
+      const { points, stretches, endS } = way;
+      return { points: points.reverse(), stretches, beforeS: endS, afterS: null, open: false };
+    }
   }
   if (footBefore && after.isBoundary) {
     const way = wayAlong(
@@ -138,7 +157,10 @@ function closingWay(
       limit,
     );
     const along = (s: number) => (after.isReversed ? lengthOf(after.shape) - s : s);
-    if (way) return { points: way.points, beforeS: null, afterS: along(way.endS), open: false };
+    if (way) {
+      const { points, stretches, endS } = way;
+      return { points, stretches, beforeS: null, afterS: along(endS), open: false };
+    }
   }
   return straightJoin(before, after, end);
 }
@@ -147,7 +169,13 @@ function straightJoin(before: StripLine, after: StripLine, end: 'start' | 'end')
   const endOf = (line: StripLine) => pointAlong(line.shape, end === 'start' ? 0 : lengthOf(line.shape));
   const nearestOn = (line: StripLine, other: StripLine) =>
     line.isBoundary && !other.isBoundary ? nearestOnPolyline(line.shape, ...endOf(other)).s : null;
-  return { points: [], beforeS: nearestOn(before, after), afterS: nearestOn(after, before), open: true };
+  return {
+    points: [],
+    stretches: [],
+    beforeS: nearestOn(before, after),
+    afterS: nearestOn(after, before),
+    open: true,
+  };
 }
 
 /** The part of a boundary between the two closings; all of it when they do not leave a piece in the right order. */

@@ -32,6 +32,9 @@ export type Tracing = {
   readings?: ReadonlyArray<{ at: ExactPlace; clicked: boolean }>;
 };
 
+/** What of an exact net is drawn. */
+type DrawnNet = Pick<ExactNet, 'lines' | 'headwater' | 'tailwater' | 'drops'>;
+
 const SHEET = { widthPx: 5000, heightPx: 3500, dpi: 300 };
 
 /** An id of the nth entity, in the form of a UUIDv7. */
@@ -40,7 +43,7 @@ export function entityIdOf(n: number): string {
 }
 
 /** The map by which the net is drawn on the sheet. */
-export function sheetMapOf(net: ExactNet, tracing: Tracing): Similarity {
+export function sheetMapOf(net: DrawnNet, tracing: Tracing): Similarity {
   const factor = tracing.lengthFactor ?? 1;
   const places = net.lines.flatMap((line) => [0, 0.5, 1].map((part) => line.at(part)));
   const middle = [0, 1].map((axis) => {
@@ -62,7 +65,7 @@ export function sheetMapOf(net: ExactNet, tracing: Tracing): Similarity {
  * A finished document of an exact net, traced on a sheet of 5,000 px that is turned by about a degree, with known
  * points, all boundaries marked, water levels and the counts stated.
  */
-export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetDocument {
+export function exactNetDocument(net: DrawnNet, tracing: Tracing = {}): FlowNetDocument {
   const map = sheetMapOf(net, tracing);
   const factor = tracing.lengthFactor ?? 1;
   const spacing = (tracing.spacingPx ?? 14) / ((tracing.pxPerUnit ?? 60) * factor);
@@ -126,7 +129,7 @@ export function exactNetDocument(net: ExactNet, tracing: Tracing = {}): FlowNetD
 
 /** Three known points about the net, so that the calibration has a residual and settles its handedness. */
 function knownPoints(
-  net: ExactNet,
+  net: DrawnNet,
   factor: number,
   toSheet: (place: ExactPlace) => SheetPoint,
 ): Array<EntityOf<'knownPoint'>> {
@@ -162,7 +165,7 @@ function setOutOf(mirrored: boolean): EntityOf<'setOut'> {
   };
 }
 
-function waterLevels(net: ExactNet, factor: number, tracing: Tracing): EntityOf<'waterLevels'> {
+function waterLevels(net: DrawnNet, factor: number, tracing: Tracing): EntityOf<'waterLevels'> {
   return {
     kind: 'waterLevels',
     ...UNSAID.waterLevels,
