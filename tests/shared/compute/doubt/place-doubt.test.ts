@@ -81,9 +81,11 @@ describe('the doubt of the set-out', () => {
     const causes = setOutCauses(document, readSetOut(document));
     const up = Math.hypot(...causes.map(({ shift }) => shift(sheetPx(at[0], at[1]))[1]));
     const along = Math.hypot(...causes.map(({ shift }) => shift(sheetPx(at[0], at[1]))[0]));
-    const centre = [0, 1].map((axis) => places.reduce((sum, place) => sum + place[axis]!, 0) / places.length);
+    const mean = (axis: 0 | 1) =>
+      places.map((place): number => place[axis]).reduce((sum, value) => sum + value, 0) / places.length;
+    const centre = [mean(0), mean(1)];
     const square = ([x, y]: readonly number[]) => (x! - centre[0]!) ** 2 + (y! - centre[1]!) ** 2;
-    const all = places.reduce((sum, place) => sum + square(place), 0);
+    const all = places.map((place) => square(place)).reduce((sum, value) => sum + value, 0);
     const expected = 2 * UNITS_PER_PX * Math.sqrt(1 / places.length + square(at) / all);
     expect(up).toBeCloseTo(expected, 4);
     expect(along).toBeCloseTo(expected, 4);
