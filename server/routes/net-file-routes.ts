@@ -1,6 +1,7 @@
 import * as z from 'zod/mini';
+import { storeBlankSheet } from '#server/http/blank-sheet.ts';
 import { defineRoute, type RouteRecord } from '#server/http/route-record.ts';
-import { takeOnBlankSheet } from '#server/services/net-file-on-blank.ts';
+import { planBlankSheet, takeOnBlankSheet } from '#server/services/net-file-on-blank.ts';
 import { createNetFileService } from '#server/services/net-file-service.ts';
 import { netSummaryOf } from '#server/services/net-summaries.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
@@ -33,7 +34,10 @@ export const netFileRoutes: RouteRecord[] = [
     reply: netFileDto,
     status: 201,
     handle: async ({ deps, params, body, actor }) => {
-      const told = await takeOnBlankSheet(deps, params.damId, body, actor);
+      const { damId } = params;
+      const plan = await planBlankSheet(deps.db.manager, damId, body);
+      const blank = await storeBlankSheet(deps, plan);
+      const told = await inTransaction(deps, (tx) => takeOnBlankSheet(tx, damId, plan, blank, body, actor));
       return { net: await netSummaryOf(deps.db.manager, body.id), told };
     },
   }),

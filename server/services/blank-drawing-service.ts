@@ -1,8 +1,8 @@
 import { DamEntity } from '#server/entities/dam-entity.ts';
 import { DrawingEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
 import { conflict, notFound } from '#server/errors/app-error.ts';
+import type { BlankSheet } from '#server/http/blank-sheet.ts';
 import type { Actor } from '#server/http/route-record.ts';
-import type { BlankSheet } from './blank-sheet.ts';
 import { writeEvent } from './event-writer.ts';
 import type { ServiceDeps } from './service-deps.ts';
 

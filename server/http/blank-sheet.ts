@@ -2,18 +2,15 @@ import { createHash, randomUUID } from 'node:crypto';
 import { mkdir, rm, writeFile } from 'node:fs/promises';
 import path from 'node:path';
 import type { AppDeps } from '#server/app-deps.ts';
-import { AppError, invalidInput } from '#server/errors/app-error.ts';
+import { AppError } from '#server/errors/app-error.ts';
 import { blankPng } from '#server/imaging/blank-png.ts';
 import { createRenderProcess } from '#server/imaging/render-process.ts';
 import type { RenderedSheet } from '#server/imaging/render-types.ts';
 import { originalKey, tilePrefix } from '#server/storage/storage-keys.ts';
-import { MAX_PDF_PIXELS } from '#shared/contract/limits.ts';
-import { sheetIdOf } from './sheet-id.ts';
 
-/** Pixels of a side; the longest page at 600 dots per inch has some 100,000. */
-const LONGEST_SIDE_PX = 100_000;
-
-export interface SheetSize {
+/** A sheet to be made: its id, which its tiles lie under, and its size. */
+export interface SheetToMake {
+  sheetId: string;
   widthPx: number;
   heightPx: number;
 }
@@ -26,26 +23,13 @@ export interface BlankSheet {
   sheet: RenderedSheet;
 }
 
-/** @throws AppError invalid-input for a size that no sheet has */
-export function refuseSize({ widthPx, heightPx }: SheetSize): void {
-  const isSide = (side: number) => Number.isInteger(side) && side > 0 && side <= LONGEST_SIDE_PX;
-  if (isSide(widthPx) && isSide(heightPx) && widthPx * heightPx <= MAX_PDF_PIXELS) return;
-  throw invalidInput([
-    {
-      path: 'sheet',
-      message: `An empty sheet has whole pixels, up to ${LONGEST_SIDE_PX} a side and ${MAX_PDF_PIXELS / 1e6} million in all; the file says ${widthPx} × ${heightPx}. Upload the drawing it was traced on instead, and put the file on that.`,
-    },
-  ]);
-}
-
 /**
  * Makes a white sheet and puts its file and tiles into storage, where they harm nobody if no drawing comes to refer to
  * them. It is drawn by a process of its own, as an uploaded scan is.
  */
 export async function storeBlankSheet(
   { config, storage }: Pick<AppDeps, 'config' | 'storage'>,
-  drawingId: string,
-  { widthPx, heightPx }: SheetSize,
+  { sheetId, widthPx, heightPx }: SheetToMake,
 ): Promise<BlankSheet> {
   if ((await storage.freeBytes()) < config.minFreeBytes) throw noRoom();
   const folder = path.join(config.storageDir, 'work', randomUUID());
@@ -57,7 +41,6 @@ export async function storeBlankSheet(
     await writeFile(file, bytes);
     const outFolder = path.join(folder, '1');
     const sheet = await renderer.renderSheet({ file, kind: 'png', pageNumber: 1, outFolder });
-    const sheetId = sheetIdOf(drawingId, 1);
     const sha256 = createHash('sha256').update(bytes).digest('hex');
     await storage.putTree(tilePrefix(sheetId, 'base'), outFolder);
     await storage.putFile(originalKey(sha256), file);
