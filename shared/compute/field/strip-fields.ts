@@ -1,4 +1,5 @@
 import { type StripField, solveStrip } from '#shared/compute/field/strip-field.ts';
+import { nearestOnPolyline } from '#shared/compute/geometry/polyline.ts';
 import type { HeadOfLine } from '#shared/compute/net/net-heads.ts';
 import { elevationAt } from '#shared/compute/net/potentials.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
@@ -8,7 +9,7 @@ import type { Strip } from '#shared/compute/net/strips.ts';
 export type FieldOfStrip = (strip: Strip) => StripField | null;
 
 /** What the fields of the strips are solved from. */
-export type FieldGround = Pick<ReadingGround, 'map' | 'heads' | 'walls' | 'freeFaces' | 'slack'>;
+export type FieldGround = Pick<ReadingGround, 'map' | 'heads' | 'walls' | 'freeFaces' | 'soilBoundaries' | 'slack'>;
 
 /** Solves a strip the first time it is asked for, and keeps it. */
 export function fieldsOnDemand(ground: FieldGround): FieldOfStrip {
@@ -28,11 +29,16 @@ function solveOn(strip: Strip, ground: FieldGround): StripField | null {
   if (before === undefined || after === undefined) return null;
   const elevation = (x: number, y: number) => elevationAt(ground.map, x, y);
   const headOn = (line: HeadOfLine) => (x: number, y: number) => line.head ?? elevation(x, y);
+  // A boundary with a head of its own that the flow passes is held as a free face is, only at another head.
+  const beside = (x: number, y: number) =>
+    strip.held.find(({ shape }) => nearestOnPolyline(shape, x, y).distance <= ground.slack);
+  const headBeside = (x: number, y: number) =>
+    ground.heads.byId.get(beside(x, y)?.id ?? '')?.head ?? elevation(x, y);
   return solveStrip(
     strip,
-    { before: headOn(before), after: headOn(after), free: elevation },
+    { before: headOn(before), after: headOn(after), free: headBeside },
     ground.walls,
-    ground.freeFaces,
+    [...ground.freeFaces, ...strip.held.map(({ shape }) => shape)],
     ground.slack,
   );
 }

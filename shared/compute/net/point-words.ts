@@ -42,7 +42,7 @@ function handByDrops(
 ): string {
   const drops = Math.round(before.drops * 100) / 100;
   const lead =
-    before.source === 'boundary'
+    before.drops === 0
       ? `No drop lost at ${before.label}, then`
       : `${drops} ${drops === 1 ? 'drop' : 'drops'} lost at ${before.label}, then`;
   const span = after.drops - before.drops;

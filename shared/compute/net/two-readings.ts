@@ -22,7 +22,7 @@ export type HandAt = RuleReading & {
 
 /**
  * Reads a place by hand's rule: h = hᵇ + f·(hᵃ − hᵇ), drops = dᵇ + f·(dᵃ − dᵇ), with f the ratio of the shortest ways
- * to the line before and to both lines. Withheld when a wall cuts the place off. `at` in working pixels.
+ * to the line before and to both lines; beside a face along which the head varies the drops follow from the head. Withheld when a wall cuts the place off. `at` in working pixels.
  */
 export function handAt(at: SheetPx, lie: InStrip, ground: ReadingGround): HandAt | Withheld {
   const way = readByHand(lie.strip, at, ground.walls, ground.slack);
@@ -30,13 +30,12 @@ export function handAt(at: SheetPx, lie: InStrip, ground: ReadingGround): HandAt
   const { before, after } = lie;
   const headBefore = headWhere(ground.heads, before, way.strip.beforeShape, way.beforeS);
   const headAfter = headWhere(ground.heads, after, way.strip.afterShape, way.afterS);
-  return {
-    way,
-    headBefore,
-    headAfter,
-    totalHead: headBefore + way.fraction * (headAfter - headBefore),
-    dropsLost: before.drops + way.fraction * (after.drops - before.drops),
-  };
+  const totalHead = headBefore + way.fraction * (headAfter - headBefore);
+  const varies = before.head === null || after.head === null;
+  const dropsLost = varies
+    ? dropsAt(totalHead, lie, ground)
+    : before.drops + way.fraction * (after.drops - before.drops);
+  return { way, headBefore, headAfter, totalHead, dropsLost };
 }
 
 /**
