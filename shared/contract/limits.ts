@@ -8,6 +8,8 @@ export const MAX_SHEET_PX = 1e6;
 export const MAX_FIGURE = 1e7;
 /** Greatest permeability, in any unit; the loosest rockfill has some 1e9 ft/year. */
 export const MAX_PERMEABILITY = 1e12;
+/** Bytes of a net file: 60 lines of 1,000 vertices take 4 MB with every number on a line of its own. */
+export const MAX_NET_FILE_BYTES = 6 * 1024 * 1024;
 /** Operations in one batch of commands; a longer queue is sent in several. */
 export const MAX_OPS_PER_BATCH = 500;
 /** Characters of one note or answer. */

@@ -1,6 +1,7 @@
 import * as z from 'zod/mini';
 import { id, requiredText } from './common.ts';
 import { netSummary } from './drawings.ts';
+import { MAX_NET_FILE_BYTES } from './limits.ts';
 
 /**
  * What a net file may be at odds with where it is put. It is asked about before a net is made: `datum`, the dam's
@@ -11,7 +12,7 @@ export type NetFileQuestion = z.infer<typeof netFileQuestion>;
 
 const fileMembers = {
   /** The text of the file, so that a fault can be told with its line. */
-  text: z.string(),
+  text: z.string().check(z.maxLength(MAX_NET_FILE_BYTES)),
   /** Questions that were answered with yes. */
   accepted: z.array(netFileQuestion),
 };

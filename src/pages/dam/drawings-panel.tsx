@@ -1,17 +1,22 @@
+import { useState } from 'react';
 import { Link } from 'react-router-dom';
+import { Button } from '#client/components/button.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { Part } from '#client/components/part.tsx';
 import { DrawingRegister } from '#client/features/drawings/components/drawing-register.tsx';
+import { NetFileDialog } from '#client/features/drawings/components/net-file-dialog.tsx';
 import { UploadButtons } from '#client/features/drawings/components/upload-buttons.tsx';
 import { UploadList } from '#client/features/drawings/components/upload-list.tsx';
 import { useDroppedFiles, usePastedFiles } from '#client/features/drawings/upload/incoming-files.ts';
 import { uploadQueue, useUploads } from '#client/features/drawings/upload/use-uploads.ts';
 import { drawingsText as text } from '#client/text/drawings.ts';
+import { netFileText } from '#client/text/net-files.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 
 /** The register of drawings, and every way in which a file comes to it. */
 export function DrawingsPanel({ dam, archived }: { dam: DamDto; archived: boolean }) {
   const canUpload = dam.can.includes('drawing.upload') && dam.archivedAt === null;
+  const [isTakingNet, setIsTakingNet] = useState(false);
   const uploads = useUploads(dam.id);
   const takeFiles = (files: File[]) => uploadQueue.add(dam.id, files);
   const isOver = useDroppedFiles(canUpload, takeFiles);
@@ -21,7 +26,16 @@ export function DrawingsPanel({ dam, archived }: { dam: DamDto; archived: boolea
       look="register"
       className="self-start"
       title={archived ? `${text.title}, ${text.putAwayMark}` : text.title}
-      action={canUpload ? <UploadButtons onFiles={takeFiles} /> : null}
+      action={
+        canUpload ? (
+          <>
+            <Button look="quiet" aria-label={netFileText.blankTitle} onClick={() => setIsTakingNet(true)}>
+              {netFileText.button}
+            </Button>
+            <UploadButtons onFiles={takeFiles} />
+          </>
+        ) : null
+      }
     >
       <UploadList uploads={uploads} />
       <Part>
@@ -35,6 +49,14 @@ export function DrawingsPanel({ dam, archived }: { dam: DamDto; archived: boolea
       <p className="m-0 px-3.5 pb-2.5 text-sm">
         <Link to={archived ? '?' : '?show=put-away'}>{archived ? text.hidePutAway : text.showPutAway}</Link>
       </p>
+      {isTakingNet ? (
+        <NetFileDialog
+          title={netFileText.blankTitle}
+          lead={netFileText.blankLead}
+          target={{ damId: dam.id }}
+          onClose={() => setIsTakingNet(false)}
+        />
+      ) : null}
       {isOver ? (
         <div className="fixed inset-2 z-40 grid place-items-center border-[3px] border-dashed border-equipotential bg-film/90 text-lg font-bold">
           {text.dropHere(dam.name)}

@@ -5,11 +5,13 @@ import { useNotice } from '#client/components/notice.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { paths } from '#client/lib/paths.ts';
 import { drawingsText as text } from '#client/text/drawings.ts';
+import { netFileText } from '#client/text/net-files.ts';
 import type { DamAction } from '#shared/contract/actions.ts';
 import type { SectionDto } from '#shared/contract/drawings.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { useArchive, useCreateNet } from '../api/drawing-mutations.ts';
 import { NameDialog } from './name-dialog.tsx';
+import { NetFileDialog } from './net-file-dialog.tsx';
 import { NetItem } from './net-item.tsx';
 
 interface SectionItemProps {
@@ -59,7 +61,7 @@ function SectionActions({
   label: string;
   onEdit: () => void;
 }) {
-  const [isAsking, setIsAsking] = useState(false);
+  const [asking, setAsking] = useState<'new' | 'file' | null>(null);
   const archive = useArchive('sections', section.id);
   const notice = useNotice();
   const isAway = section.archivedAt !== null;
@@ -73,8 +75,11 @@ function SectionActions({
       <div className="mt-2 flex flex-wrap gap-2">
         {isAway ? null : (
           <>
-            <Button aria-label={text.newNetOf(label)} onClick={() => setIsAsking(true)}>
+            <Button aria-label={text.newNetOf(label)} onClick={() => setAsking('new')}>
               {text.newNet}
+            </Button>
+            <Button look="quiet" aria-label={netFileText.buttonOf(label)} onClick={() => setAsking('file')}>
+              {netFileText.button}
             </Button>
             <Button look="quiet" aria-label={text.editSectionOf(label)} onClick={onEdit}>
               {text.editSection}
@@ -90,7 +95,17 @@ function SectionActions({
           {isAway ? text.bringBack : text.putAway}
         </Button>
       </div>
-      {isAsking ? <NewNetDialog section={section} label={label} onClose={() => setIsAsking(false)} /> : null}
+      {asking === 'new' ? (
+        <NewNetDialog section={section} label={label} onClose={() => setAsking(null)} />
+      ) : null}
+      {asking === 'file' ? (
+        <NetFileDialog
+          title={netFileText.title(label)}
+          lead={netFileText.lead}
+          target={{ sectionId: section.id }}
+          onClose={() => setAsking(null)}
+        />
+      ) : null}
     </>
   );
 }

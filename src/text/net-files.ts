@@ -1,0 +1,28 @@
+import type { NetFileQuestion } from '#shared/contract/net-files.ts';
+
+export const netFileText = {
+  button: 'Net from a file',
+  buttonOf: (label: string) => `Net from a file for ${label}`,
+  title: (label: string) => `Net from a file for ${label}`,
+  blankTitle: 'Net from a file on an empty sheet',
+  lead: 'A file that was taken out of the desk of this sheet. It becomes a net of its own; nothing here is changed by it.',
+  blankLead:
+    'A file that was taken out of a desk, without its drawing. A white sheet of the same size is made for it.',
+  file: 'Net file (JSON)',
+  fileNeeded: 'Choose the file first.',
+  tooLarge: 'The file is larger than 6 MB, which no net is. Choose the file that the desk gave.',
+  unreadable: 'The file could not be read from this device. Choose it again.',
+  section: 'Section',
+  sectionHint: 'Its letter or name: B–B, Spillway axis.',
+  name: 'Load case',
+  nameHint: 'Full supply, flood 119.40, drawn by the designer …',
+  nameNeeded: 'Name the load case.',
+  sectionNeeded: 'Name the section.',
+  make: 'Make the net and open the desk',
+  makeAllTheSame: 'Make the net all the same',
+  accept: {
+    datum: 'The elevations differ',
+    setOut: 'The known points differ',
+  } satisfies Record<NetFileQuestion, string>,
+  made: 'The net is made.',
+} as const;
