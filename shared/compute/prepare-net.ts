@@ -12,7 +12,6 @@ import {
 import { headsOf, type NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind } from '#shared/compute/net/net-lines.ts';
 import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
-import { questionPhreaticHeads } from '#shared/compute/net/phreatic-heads.ts';
 import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, placePoint } from '#shared/compute/net/read-point.ts';
@@ -21,6 +20,7 @@ import { questionSoils } from '#shared/compute/net/soil-boundaries.ts';
 import { solidBodies } from '#shared/compute/net/solid-bodies.ts';
 import { questionUpstream } from '#shared/compute/net/upstream-side.ts';
 import { checkWaterline } from '#shared/compute/net/waterline.ts';
+import { readPhreatic } from '#shared/compute/phreatic/read-phreatic.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { SetOut } from '#shared/compute/set-out.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
@@ -34,6 +34,7 @@ import {
 } from '#shared/compute/working-frame.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, NetReading } from '#shared/contract/reading.ts';
+import type { PhreaticReading } from '#shared/contract/reading-phreatic.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
 
 /** The waterline may depart from the headwater by this part of a drop before the readings are withheld. */
@@ -50,6 +51,8 @@ export type PreparedNet = {
   readonly ground: ReadingGround;
   readonly quantities: NetReading['quantities'];
   readonly findings: readonly Finding[];
+  /** In the working frame; null in a section without a phreatic line. */
+  readonly phreatic: PhreaticReading | null;
   /** True when nothing is missing or wrong, so that figures may be given. */
   readonly finished: boolean;
 };
@@ -72,25 +75,30 @@ export function prepareNet(
   inputs: SingleInputs,
 ): PreparedNet {
   const { water, permeability, count } = inputs;
-  const frame = workingFrameOf(sheetMap, anisotropyOf(document, inputs));
+  const frame = workingFrameOf(sheetMap, anisotropyOf(document, inputs, setOut.impliedRatio));
   const working = steadyTraces(tracesInWorkingFrame(document, frame), count.tracingAccuracyPx);
   const { map } = frame;
   const model = modelNet(working, map, water, count.tracingAccuracyPx);
   const accuracy = count.tracingAccuracyPx * map.elevationPerPx;
   const levelUnit = elevationUnit(document.unitSystem, document.datum);
   const heads = headsOf(model, map, water.headwater, count.drops, accuracy);
-  const channels = countChannels(model.equipotentials, linesOfKind(model.lines, 'flowLine'), slackOf(inputs));
+  const channels = countChannels(
+    model.equipotentials,
+    linesOfKind(model.lines, 'flowLine'),
+    model.order,
+    slackOf(inputs),
+  );
   const { quantities, findings: quantityFindings } = quantitiesOf(
-    heads,
-    channels,
+    { order: model.order, heads, channels },
     inputs,
     document.unitSystem,
   );
+  const phreatic = readPhreatic(model, heads, map, count.tracingAccuracyPx, levelUnit);
   const netFindings = [
     ...model.findings,
     ...heads.findings,
     ...waterlineFindings(model, heads, map, inputs, levelUnit),
-    ...questionPhreaticHeads(model, heads, map, accuracy, levelUnit),
+    ...phreatic.findings,
     ...questionUpstream(singleOf(document, 'setOut')?.value.upstream ?? null, model.potentials, map),
     ...questionLevels(water, model.potentials),
     ...questionHeadwater(water.headwater, extentOf(model.lines, map), document.unitSystem),
@@ -111,14 +119,19 @@ export function prepareNet(
     ground: groundOf(model, heads, setOut, map, inputs, levelUnit),
     quantities,
     findings,
+    phreatic: phreatic.reading,
     finished,
   };
 }
 
 /** kh/kv and dip of the soils that are said to lie somewhere in the section. */
-function anisotropyOf(document: FlowNetDocument, inputs: SingleInputs): CommonAnisotropy {
+function anisotropyOf(
+  document: FlowNetDocument,
+  inputs: SingleInputs,
+  impliedRatio: number | null,
+): CommonAnisotropy {
   const soils = entitiesOf(document, 'soil').filter(({ value }) => value.places.length > 0);
-  return commonAnisotropy([inputs.permeability, ...soils.map(({ value }) => value)]);
+  return commonAnisotropy([inputs.permeability, ...soils.map(({ value }) => value)], impliedRatio);
 }
 
 /** Pixels by which a traced line may miss what it is meant to meet. */
@@ -160,6 +173,7 @@ function groundOf(
     freeFaces: model.potentials
       .filter((potential) => potential.level === null)
       .map((potential) => potential.shape),
+    soilBoundaries: shapes('soilBoundary'),
     slack: slackOf(inputs),
   };
   return {

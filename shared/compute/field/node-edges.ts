@@ -1,8 +1,8 @@
 import Flatbush from 'flatbush';
 import { orientation, segmentsMeet } from '#shared/compute/geometry/predicates.ts';
 
-/** What an edge of a strip is: a line held at its head, a boundary closed to flow, or an open end. */
-export type EdgeKind = 'before' | 'after' | 'free' | 'closed' | 'open';
+/** What an edge of a strip is: a line held at its head, a boundary closed to flow, an open end, or a soil boundary. */
+export type EdgeKind = 'before' | 'after' | 'free' | 'closed' | 'open' | 'soil';
 
 /** An edge between two numbered points. */
 export type NodedEdge = { readonly from: number; readonly to: number; readonly kind: EdgeKind };
@@ -13,7 +13,7 @@ export type NodedEdges = { readonly xy: Float64Array; readonly edges: readonly N
 const MOST_PASSES = 8;
 
 /** Which kind holds where edges lie on one another: a held head before a wall, a wall before an open end. */
-const RANK: Record<EdgeKind, number> = { before: 0, after: 1, free: 2, closed: 3, open: 4 };
+const RANK: Record<EdgeKind, number> = { before: 0, after: 1, free: 2, closed: 3, open: 4, soil: 5 };
 
 /**
  * Splits edges where they cross, touch or overlap, and draws together points nearer than `merge`, so that edges meet
@@ -48,7 +48,7 @@ export function nodeEdges(
 class PointStore {
   readonly x: number[] = [];
   readonly y: number[] = [];
-  private readonly cells = new Map<string, number[]>();
+  private readonly cells = new Map<number, number[]>();
 
   constructor(readonly merge: number) {}
 
@@ -57,28 +57,41 @@ class PointStore {
     const cy = Math.floor(y / this.merge);
     for (let i = cx - 1; i <= cx + 1; i += 1) {
       for (let j = cy - 1; j <= cy + 1; j += 1) {
-        for (const n of this.cells.get(`${i},${j}`) ?? []) {
+        for (const n of this.cells.get(cellKey(i, j)) ?? []) {
           if (Math.hypot(this.x[n]! - x, this.y[n]! - y) < this.merge) return n;
         }
       }
     }
     const n = this.x.push(x) - 1;
     this.y.push(y);
-    const key = `${cx},${cy}`;
-    this.cells.set(key, [...(this.cells.get(key) ?? []), n]);
+    const key = cellKey(cx, cy);
+    const held = this.cells.get(key);
+    if (held === undefined) this.cells.set(key, [n]);
+    else held.push(n);
     return n;
   }
 
   flat(): Float64Array {
-    return Float64Array.from(this.x.flatMap((x, i) => [x, this.y[i]!]));
+    const xy = new Float64Array(2 * this.x.length);
+    for (let i = 0; i < this.x.length; i += 1) {
+      xy[2 * i] = this.x[i]!;
+      xy[2 * i + 1] = this.y[i]!;
+    }
+    return xy;
   }
 }
 
+/** Two cells may share a key: what is found in them is looked at anyway. */
+function cellKey(i: number, j: number): number {
+  return i * 134_217_728 + j;
+}
+
 function withoutRepeats(edges: readonly NodedEdge[]): NodedEdge[] {
-  const kept = new Map<string, NodedEdge>();
+  const kept = new Map<number, NodedEdge>();
   for (const edge of edges) {
     if (edge.from === edge.to) continue;
-    const key = edge.from < edge.to ? `${edge.from},${edge.to}` : `${edge.to},${edge.from}`;
+    const [low, high] = edge.from < edge.to ? [edge.from, edge.to] : [edge.to, edge.from];
+    const key = low * 67_108_864 + high;
     const known = kept.get(key);
     if (known === undefined || RANK[edge.kind] < RANK[known.kind]) kept.set(key, edge);
   }

@@ -9,7 +9,10 @@ import type { Strip } from '#shared/compute/net/strips.ts';
 export type FieldOfStrip = (strip: Strip) => StripField | null;
 
 /** What the fields of the strips are solved from. */
-export type FieldGround = Pick<ReadingGround, 'map' | 'heads' | 'walls' | 'freeFaces' | 'soilBoundaries' | 'slack'>;
+export type FieldGround = Pick<
+  ReadingGround,
+  'map' | 'heads' | 'walls' | 'freeFaces' | 'soilBoundaries' | 'slack'
+>;
 
 /** Solves a strip the first time it is asked for, and keeps it. */
 export function fieldsOnDemand(ground: FieldGround): FieldOfStrip {
@@ -34,11 +37,6 @@ function solveOn(strip: Strip, ground: FieldGround): StripField | null {
     strip.held.find(({ shape }) => nearestOnPolyline(shape, x, y).distance <= ground.slack);
   const headBeside = (x: number, y: number) =>
     ground.heads.byId.get(beside(x, y)?.id ?? '')?.head ?? elevation(x, y);
-  return solveStrip(
-    strip,
-    { before: headOn(before), after: headOn(after), free: headBeside },
-    ground.walls,
-    [...ground.freeFaces, ...strip.held.map(({ shape }) => shape)],
-    ground.slack,
-  );
+  const around = { ...ground, freeFaces: [...ground.freeFaces, ...strip.held.map(({ shape }) => shape)] };
+  return solveStrip(strip, { before: headOn(before), after: headOn(after), free: headBeside }, around, null);
 }

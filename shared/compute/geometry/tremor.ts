@@ -116,9 +116,9 @@ class ParabolaSums {
     const [a, b, c] = [s2 * s4 - s3 * s3, s2 * s3 - s1 * s4, s1 * s3 - s2 * s2];
     const determinant = n * a + s1 * b + s2 * c;
     if (!(determinant > 0)) return null;
-    const valueOf = ([m0, m1, m2]: readonly number[]) => (a * m0! + b * m1! + c * m2!) / determinant;
+    const atVertex = ([m0, m1, m2]: readonly number[]) => (a * m0! + b * m1! + c * m2!) / determinant;
     const [px, py] = this.points[this.middle]!;
-    return { at: [px + valueOf(this.x), py + valueOf(this.y)], spread: Math.sqrt(a / determinant) };
+    return { at: [px + atVertex(this.x), py + atVertex(this.y)], spread: Math.sqrt(a / determinant) };
   }
 
   private take(i: number): void {

@@ -18,6 +18,8 @@ export type ReadingGround = {
   readonly faces: readonly Polyline[];
   /** Boundaries along which the head is the elevation. */
   readonly freeFaces: readonly Polyline[];
+  /** Lines between soils, along which the field may bend. */
+  readonly soilBoundaries: readonly Polyline[];
   /** The head between the two lines of a strip, solved the first time it is asked for. */
   readonly fieldOf: FieldOfStrip;
   readonly slack: number;
