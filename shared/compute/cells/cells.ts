@@ -13,6 +13,7 @@ import {
   type StripRails,
 } from '#shared/compute/cells/rails.ts';
 import { CORNER_DEG, chordFor, singularPoints } from '#shared/compute/cells/singular-points.ts';
+import { ringContains, ringOf } from '#shared/compute/geometry/polygon.ts';
 import { firstOf, type Polyline, pieceOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { distanceToSegment } from '#shared/compute/geometry/thin.ts';
@@ -166,7 +167,8 @@ function reasonAgainst(
   if (holds(rails.brokenBefore, left.sBefore, right.sBefore)) return 'lineEnds';
   if (holds(rails.brokenAfter, left.sAfter, right.sAfter)) return 'lineEnds';
   const near = Math.max(3 * facts.accuracyPx, CORNER_PART * Math.min(measures.length, measures.width));
-  if (facts.singular.some((point) => liesOn(sides, point, near))) return 'singular';
+  if (facts.singular.some((point) => liesOn(sides, point, near) || liesWithin(sides, point)))
+    return 'singular';
   return hasGroundCorner(sides, left, right, facts) ? 'singular' : null;
 }
 
@@ -174,6 +176,12 @@ function liesOn({ before, after, left, right }: CellSides, point: Pair, near: nu
   return [before, after, left, right].some((side) =>
     side.some((place, i) => i > 0 && distanceToSegment(point, side[i - 1]!, place) <= near),
   );
+}
+
+/** The tip of a wall traced as one line lies within the cell that goes round it: its two faces are one place. */
+function liesWithin({ before, after, left, right }: CellSides, point: Pair): boolean {
+  const ring = ringOf([...before, ...right, ...[...after].reverse(), ...[...left].reverse()]);
+  return ring !== null && ringContains(ring, ...point);
 }
 
 /** True where a potential boundary and a traced boundary along the flow meet at an angle far from a right one. */

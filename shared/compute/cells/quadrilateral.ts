@@ -29,6 +29,8 @@ export type CellMeasures = {
 /** Lines by which each mean length is taken, and the pieces of each line. */
 const LINES = 4;
 const PIECES = 4;
+/** Steps of the grid, so that the middles of the parts and the ends of the pieces both lie on it. */
+const STEPS = 8;
 
 /**
  * Length, width, mid-lines, middle and area of a four-sided cell with curved sides. The inside is spanned by the sides
@@ -38,16 +40,16 @@ const PIECES = 4;
  */
 export function measureCell(sides: CellSides): CellMeasures {
   const span = spanOf(sides);
-  const along = lineOf((t) => span(0.5, t));
-  const across = lineOf((t) => span(t, 0.5));
-  const parts = Array.from({ length: LINES }, (_, i) => (i + 0.5) / LINES);
+  const half = STEPS / 2;
+  const along = lineOf(span, half, 'along');
+  const across = lineOf(span, half, 'across');
   return {
-    length: mean(parts.map((u) => lengthOfPoints(lineOf((t) => span(u, t))))),
-    width: mean(parts.map((v) => lengthOfPoints(lineOf((t) => span(t, v))))),
-    midAngleDeg: angleBetween(ends(span(0.5, 0.25), span(0.5, 0.75)), ends(span(0.25, 0.5), span(0.75, 0.5))),
+    length: meanLength(span, 'along'),
+    width: meanLength(span, 'across'),
+    midAngleDeg: angleBetween(ends(along[1]!, along[3]!), ends(across[1]!, across[3]!)),
     along,
     across,
-    middle: span(0.5, 0.5),
+    middle: along[PIECES / 2]!,
     area: Math.abs(
       areaOf([...sides.before, ...sides.right, ...[...sides.after].reverse(), ...[...sides.left].reverse()]),
     ),
@@ -83,26 +85,56 @@ export function angleBetween(a: Pair, b: Pair): number {
   return cross === 0 && dot === 0 ? 90 : (Math.atan2(Math.abs(cross), dot) * 180) / Math.PI;
 }
 
-function spanOf({ before, after, left, right }: CellSides): (u: number, v: number) => Pair {
-  const pieces = 2 * PIECES;
-  const b = evenlyAlong(before, pieces);
-  const a = evenlyAlong(after, pieces);
-  const l = evenlyAlong(left, pieces);
-  const r = evenlyAlong(right, pieces);
-  const at = (u: number, v: number, axis: 0 | 1) => {
-    const i = Math.round(u * pieces);
-    const j = Math.round(v * pieces);
-    const sides = (1 - v) * b[i]![axis] + v * a[i]![axis] + (1 - u) * l[j]![axis] + u * r[j]![axis];
-    const corners =
-      (1 - v) * ((1 - u) * b[0]![axis] + u * b[pieces]![axis]) +
-      v * ((1 - u) * a[0]![axis] + u * a[pieces]![axis]);
-    return sides - corners;
-  };
-  return (u, v) => [at(u, v, 0), at(u, v, 1)];
+/**
+ * The grid that the sides span, `STEPS` steps each way: x and y flat, index u + v·(STEPS + 1), u from left to right and v
+ * from the line before to the line after.
+ */
+type Span = { readonly x: Float64Array; readonly y: Float64Array };
+
+function spanOf({ before, after, left, right }: CellSides): Span {
+  const sides = [before, after, left, right].map((side) => evenlyAlong(side, STEPS)) as Pair[][];
+  return { x: spanAxis(sides, 0), y: spanAxis(sides, 1) };
 }
 
-function lineOf(at: (t: number) => Pair): Pair[] {
-  return Array.from({ length: PIECES + 1 }, (_, i) => at(i / PIECES));
+function spanAxis([b, a, l, r]: readonly Pair[][], axis: 0 | 1): Float64Array {
+  const grid = new Float64Array((STEPS + 1) ** 2);
+  const [b0, b1] = [b![0]![axis], b![STEPS]![axis]];
+  const [a0, a1] = [a![0]![axis], a![STEPS]![axis]];
+  for (let j = 0; j <= STEPS; j += 1) {
+    const v = j / STEPS;
+    for (let i = 0; i <= STEPS; i += 1) {
+      const u = i / STEPS;
+      const fromSides = (1 - v) * b![i]![axis] + v * a![i]![axis] + (1 - u) * l![j]![axis] + u * r![j]![axis];
+      const fromCorners = (1 - v) * ((1 - u) * b0 + u * b1) + v * ((1 - u) * a0 + u * a1);
+      grid[i + j * (STEPS + 1)] = fromSides - fromCorners;
+    }
+  }
+  return grid;
+}
+
+/** Index of the k-th point of a line of the grid, every second step along it. */
+function indexOf(line: number, k: number, way: 'along' | 'across'): number {
+  const step = (k * STEPS) / PIECES;
+  return way === 'along' ? line + step * (STEPS + 1) : step + line * (STEPS + 1);
+}
+
+function lineOf({ x, y }: Span, line: number, way: 'along' | 'across'): Pair[] {
+  return Array.from({ length: PIECES + 1 }, (_, k): Pair => {
+    const i = indexOf(line, k, way);
+    return [x[i]!, y[i]!];
+  });
+}
+
+function meanLength({ x, y }: Span, way: 'along' | 'across'): number {
+  let sum = 0;
+  for (let line = 1; line < STEPS; line += STEPS / LINES) {
+    for (let k = 1; k <= PIECES; k += 1) {
+      const from = indexOf(line, k - 1, way);
+      const to = indexOf(line, k, way);
+      sum += Math.sqrt((x[to]! - x[from]!) ** 2 + (y[to]! - y[from]!) ** 2);
+    }
+  }
+  return sum / LINES;
 }
 
 /** Points that part a run of points into equal lengths, ends included. */
@@ -145,9 +177,7 @@ function ends(from: Pair, to: Pair): Pair {
 }
 
 function distance(a: Pair, b: Pair): number {
-  return Math.hypot(b[0] - a[0], b[1] - a[1]);
-}
-
-function mean(values: readonly number[]): number {
-  return values.reduce((sum, value) => sum + value, 0) / values.length;
+  const dx = b[0] - a[0];
+  const dy = b[1] - a[1];
+  return Math.sqrt(dx * dx + dy * dy);
 }

@@ -1,0 +1,144 @@
+import { type Polyline, pointAlong, segmentAlong } from '#shared/compute/geometry/polyline.ts';
+import type { Pair } from '#shared/compute/geometry/predicates.ts';
+
+/** Direction of a traced line at a place, and how far the hand's tremor may have turned it (standard deviation, radians). */
+export type Tangent = {
+  readonly direction: Pair;
+  readonly tremor: number;
+  /** False at an end of a line whose vertices lie too far apart to say how it bends there. */
+  readonly isKnown: boolean;
+};
+
+type Fit = Omit<Tangent, 'isKnown'>;
+type Sample = { readonly by: number; readonly at: Pair };
+
+/** Vertices that a fit to a freely curved line takes at least, so that tremor and curve can be told apart. */
+const LEAST_VERTICES = 5;
+/** At an end the vertices of a fit may lie this many windows away. */
+const MOST_WINDOWS = 2;
+/** Places at which a straight-sided boundary is sampled. */
+const SAMPLES = 9;
+
+/**
+ * Direction of a curved traced line at distance `s`: a parabola in the distance along the line is fitted to its
+ * vertices within `window` to either side, or to the five nearest where there are fewer, since one 3-pixel segment says
+ * nothing but how the hand trembled. Least squares; the tremor follows from `accuracyPx`, the standard deviation of a
+ * vertex, or from what the vertices stray from the parabola where that is more. All in one frame's pixels.
+ */
+export function tangentOfCurve(shape: Polyline, s: number, window: number, accuracyPx: number): Tangent {
+  const samples = verticesAbout(shape, s, window);
+  const [back, on] = [-samples[0]!.by, samples[samples.length - 1]!.by];
+  const isOneSided = Math.min(back, on) < window / 2;
+  return {
+    ...(fitted(samples, samples.length, accuracyPx) ?? chordAt(shape, s, accuracyPx)),
+    isKnown: !isOneSided || Math.max(back, on) <= MOST_WINDOWS * window,
+  };
+}
+
+/**
+ * Direction of a boundary that may be straight from corner to corner, at distance `s`: a parabola fitted to places
+ * evenly spread within `window` to either side. As `tangentOfCurve` otherwise.
+ */
+export function tangentOfBoundary(shape: Polyline, s: number, window: number, accuracyPx: number): Tangent {
+  const length = shape.cum[shape.cum.length - 1]!;
+  const from = Math.max(0, s - window);
+  const to = Math.min(length, s + window);
+  const samples = Array.from({ length: SAMPLES }, (_, i): Sample => {
+    const along = from + ((to - from) * i) / (SAMPLES - 1);
+    return { by: along - s, at: pointAlong(shape, along) };
+  });
+  const vertices = shape.cum.filter((along) => along >= from && along <= to).length;
+  return {
+    ...(fitted(samples, Math.max(2, vertices), accuracyPx) ?? chordAt(shape, s, accuracyPx)),
+    isKnown: true,
+  };
+}
+
+function verticesAbout(shape: Polyline, s: number, window: number): Sample[] {
+  const { cum, xy } = shape;
+  let first = segmentAlong(shape, s);
+  let last = first + 1;
+  const wants = (i: number) => i >= 0 && i < cum.length;
+  for (;;) {
+    const before = wants(first - 1) ? s - cum[first - 1]! : Number.POSITIVE_INFINITY;
+    const after = wants(last + 1) ? cum[last + 1]! - s : Number.POSITIVE_INFINITY;
+    const next = Math.min(before, after);
+    if (!Number.isFinite(next) || (next > window && last - first + 1 >= LEAST_VERTICES)) break;
+    if (before <= after) first -= 1;
+    else last += 1;
+  }
+  return Array.from({ length: last - first + 1 }, (_, k): Sample => {
+    const i = first + k;
+    return { by: cum[i]! - s, at: [xy[2 * i]!, xy[2 * i + 1]!] };
+  });
+}
+
+/** Slope at 0 of the parabola (of the straight line through two samples) and its tremor; null when it has no direction. */
+function fitted(samples: readonly Sample[], independent: number, accuracyPx: number): Fit | null {
+  const scale = Math.max(...samples.map(({ by }) => Math.abs(by)));
+  if (samples.length < 3 || !(scale > 0)) return null;
+  const sums = [0, 0, 0, 0, 0];
+  const x = [0, 0, 0];
+  const y = [0, 0, 0];
+  const [originX, originY] = samples[0]!.at;
+  for (const { by, at } of samples) {
+    let power = 1;
+    for (let k = 0; k < 5; k += 1) {
+      sums[k]! += power;
+      if (k < 3) {
+        x[k]! += power * (at[0] - originX);
+        y[k]! += power * (at[1] - originY);
+      }
+      power *= by / scale;
+    }
+  }
+  const rows = inverseOf(sums);
+  if (rows === null) return null;
+  const [xs, ys] = [rows.map((row) => dot(row, x)), rows.map((row) => dot(row, y))];
+  const size = Math.hypot(xs[1]!, ys[1]!);
+  if (!(size > 0)) return null;
+  const square = samples.reduce((sum, { by, at }) => {
+    const t = by / scale;
+    const ex = xs[0]! + t * (xs[1]! + t * xs[2]!) - (at[0] - originX);
+    const ey = ys[0]! + t * (ys[1]! + t * ys[2]!) - (at[1] - originY);
+    return sum + ex * ex + ey * ey;
+  }, 0);
+  // A line that bends within the window as no parabola does is known no better than by what it strays from one.
+  const strays = samples.length > 3 ? Math.sqrt(square / (samples.length - 3)) : 0;
+  const spread = Math.sqrt((Math.max(0, rows[1]![1]!) * samples.length) / independent);
+  return {
+    direction: [xs[1]! / size, ys[1]! / size],
+    tremor: (Math.max(accuracyPx, strays) * spread) / size,
+  };
+}
+
+function dot(a: readonly number[], b: readonly number[]): number {
+  return a[0]! * b[0]! + a[1]! * b[1]! + a[2]! * b[2]!;
+}
+
+/** Inverse of the normal matrix [[s0 s1 s2][s1 s2 s3][s2 s3 s4]]; null when it is singular. */
+function inverseOf(sums: readonly number[]): number[][] | null {
+  const [s0, s1, s2, s3, s4] = sums as [number, number, number, number, number];
+  const c00 = s2 * s4 - s3 * s3;
+  const c01 = s2 * s3 - s1 * s4;
+  const c02 = s1 * s3 - s2 * s2;
+  const determinant = s0 * c00 + s1 * c01 + s2 * c02;
+  if (!(Math.abs(determinant) > 1e-12 * s0 ** 3)) return null;
+  return [
+    [c00, c01, c02],
+    [c01, s0 * s4 - s2 * s2, s1 * s2 - s0 * s3],
+    [c02, s1 * s2 - s0 * s3, s0 * s2 - s1 * s1],
+  ].map((row) => row.map((entry) => entry / determinant));
+}
+
+function chordAt(shape: Polyline, s: number, accuracyPx: number): Fit {
+  const i = segmentAlong(shape, s);
+  const length = shape.cum[i + 1]! - shape.cum[i]!;
+  return {
+    direction: [
+      (shape.xy[2 * i + 2]! - shape.xy[2 * i]!) / length,
+      (shape.xy[2 * i + 3]! - shape.xy[2 * i + 1]!) / length,
+    ],
+    tremor: (Math.SQRT2 * accuracyPx) / length,
+  };
+}
