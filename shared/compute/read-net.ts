@@ -10,6 +10,7 @@ import type { NetModel } from '#shared/compute/net/net-model.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, readPoint, withholdPoint } from '#shared/compute/net/read-point.ts';
 import { findTangles } from '#shared/compute/net/tangles.ts';
+import { phreaticOnSheet } from '#shared/compute/phreatic/read-phreatic.ts';
 import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
@@ -54,7 +55,8 @@ function withoutNet(
     setOut: setOut.reading,
     lines: linesOfKind(netLinesOf(document), 'equipotential').map(({ id }) => unordered(id)),
     points: points.map((point) => withheldBy(point, findings)),
-    quantities: quantitiesOf(null, null, inputs, document.unitSystem).quantities,
+    quantities: quantitiesOf(null, inputs, document.unitSystem).quantities,
+    phreatic: null,
   };
 }
 
@@ -79,6 +81,7 @@ function readOnSection(
       return pointOnSheet({ ...reading, findings: [...reading.findings, ...far] }, frame);
     }),
     quantities,
+    phreatic: phreaticOnSheet(prepared.phreatic, frame),
   };
 }
 

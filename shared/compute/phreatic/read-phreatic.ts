@@ -14,6 +14,7 @@ import type { NetModel } from '#shared/compute/net/net-model.ts';
 import { elevationAt, type Potential } from '#shared/compute/net/potentials.ts';
 import { entryOf, exitOf, type PhreaticCourse, windowOf } from '#shared/compute/phreatic/phreatic-ends.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
+import type { WorkingFrame } from '#shared/compute/working-frame.ts';
 import type { Finding } from '#shared/contract/reading.ts';
 import type { PhreaticEnd, PhreaticReading } from '#shared/contract/reading-phreatic.ts';
 import { fixedText } from '#shared/text/number-text.ts';
@@ -45,25 +46,42 @@ export function readPhreatic(
   const entry = entryOf(course, map.up, accuracyPx);
   const exit = exitOf(course, map.up, accuracyPx);
   const guesses = lines.filter(({ value }) => value.origin === 'guessed');
-  const accuracy = accuracyPx * map.unitsPerPx;
+  const accuracy = accuracyPx * map.elevationPerPx;
+  const meetings = meetingsOf(
+    model,
+    heads,
+    map,
+    lines.map((line) => line.id),
+  );
   return {
     reading: {
       guessed: guesses.length > 0,
-      meetings: meetingsOf(
-        model,
-        heads,
-        map,
-        lines.map((line) => line.id),
-      ),
+      meetings,
       entry,
       exit,
     },
     findings: [
       ...guesses.map(({ id, shape }) => stillAGuess(id, firstOf(shape))),
+      ...questionMeetings(meetings, heads, accuracy, levelUnit),
       ...questionEnd(entry, 'phreaticEntry', course.shape, accuracyPx),
       ...questionEnd(exit, 'phreaticExit', course.shape, accuracyPx),
       ...questionRise(course.shape, map, 3 * accuracy, levelUnit),
     ],
+  };
+}
+
+/** The check with its places carried from the working frame to the sheet. */
+export function phreaticOnSheet(reading: PhreaticReading | null, frame: WorkingFrame): PhreaticReading | null {
+  if (reading === null || frame.isSheet) return reading;
+  const onSheet = <T extends { at: [number, number] }>(placed: T): T => {
+    const [x, y] = frame.toSheet(placed.at);
+    return { ...placed, at: [x, y] };
+  };
+  return {
+    ...reading,
+    meetings: reading.meetings.map(onSheet),
+    entry: reading.entry && onSheet(reading.entry),
+    exit: reading.exit && onSheet(reading.exit),
   };
 }
 
@@ -112,6 +130,30 @@ function meetingsOf(
         };
       });
   });
+}
+
+/** A hand-drawn net meets the phreatic line this well, in parts of a drop; a line left out or a wrong level does not. */
+const ALLOWED_PART = 1 / 3;
+
+/** One question, at the equipotential that departs most; the list has them all. */
+function questionMeetings(
+  meetings: PhreaticReading['meetings'],
+  heads: NetHeads,
+  accuracy: number,
+  levelUnit: string,
+): Finding[] {
+  const allowed = Math.max(ALLOWED_PART * (heads.count?.headPerDrop ?? 0), 3 * accuracy);
+  const worst = [...meetings].sort((a, b) => Math.abs(b.departure) - Math.abs(a.departure))[0];
+  if (worst === undefined || !(Math.abs(worst.departure) > allowed)) return [];
+  const label = heads.byId.get(worst.lineId)?.label ?? 'an equipotential';
+  return [
+    makeFinding(
+      'question',
+      'phreaticHeadDiffers',
+      `Where ${label} meets the phreatic line its head is ${fixedText(worst.head, 2)} ${levelUnit}, but the elevation there is ${fixedText(worst.elevation, 2)} ${levelUnit}; on the phreatic line both are one. Check the count, the levels and whether a line was left out.`,
+      { cell: 'netCheck', entityIds: [worst.lineId], at: worst.at },
+    ),
+  ];
 }
 
 function stillAGuess(id: string, at: Pair): Finding {
