@@ -1,6 +1,6 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import type { SetOutFit } from '#shared/compute/set-out.ts';
-import { askOffsets, askUp, UPRIGHT_LIMIT, wrapped } from '#shared/compute/set-out-up.ts';
+import { fittedBy, type SetOutFit } from '#shared/compute/set-out-fit.ts';
+import { askOffsets, askUp, UPRIGHT_LIMIT, upTurn, wrapped } from '#shared/compute/set-out-up.ts';
 import { type Similarity, similarityForward } from '#shared/compute/similarity.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
 
@@ -39,12 +39,12 @@ export function fitByDistance(points: readonly KnownPoint[], setOut: SetOutValue
     withElevation.value,
     withOffset.value,
   );
-  return { state: 'fitted', similarity, fitPoints: 2 };
+  return fittedBy(similarity, 2);
 }
 
 /** Clockwise rotation of the section's horizontal in radians; null when a level line stands too steep to tell. */
 function rotationOf(lineAngle: number, setOut: SetOutValue): number | null {
-  const up = ((setOut.upQuarterTurns ?? 0) * Math.PI) / 2;
+  const up = upTurn(setOut);
   if (setOut.level === 'sheet') return up;
   const departure = wrapped(-lineAngle - up);
   const nearer = Math.abs(departure) <= Math.PI / 2 ? departure : wrapped(departure + Math.PI);

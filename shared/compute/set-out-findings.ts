@@ -1,5 +1,9 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import { type Similarity, similarityForward, similarityScale } from '#shared/compute/similarity.ts';
+import { sheetPx } from '#shared/compute/frames.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import type { FittedSection } from '#shared/compute/set-out-fit.ts';
+import { controlPairs } from '#shared/compute/set-out-points.ts';
+import { questionEqualScales } from '#shared/compute/set-out-unequal.ts';
 import { type EntityOf, entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
 import { fixedText, plainText } from '#shared/text/number-text.ts';
@@ -10,36 +14,70 @@ const SCALE_TOLERANCE = 0.02;
 /** A residual is questioned beyond this part of the extent of the known points; paper shrinks by less. */
 const RESIDUAL_PART = 0.01;
 
+/** Declared scales that differ by less than this part are equal. */
+const EQUAL_PART = 0.01;
+
 /**
  * Questions a set-out that fits but does not go together: a residual that no paper makes, values typed beside a
- * distance that deny it, a scale other than the stated one. `residual` in the document's length unit, null where there
- * is none; `impliedScale` the n of 1:n, null where the resolution is unknown.
+ * distance that deny it, scales that are not as declared, a scale other than the stated one. `residual` in the
+ * document's length unit, null where there is none; `impliedScale` the n of 1:n along the level, null where the
+ * resolution is unknown.
  */
 export function setOutFindings(
   document: FlowNetDocument,
   setOut: EntityOf<'setOut'>,
-  similarity: Similarity,
+  fit: FittedSection,
   residual: number | null,
   impliedScale: number | null,
 ): Finding[] {
+  if (setOut.method === 'distance') {
+    return [
+      ...scaleFindings(impliedScale, setOut.statedScale, fit),
+      ...distanceFindings(document, fit.map, setOut.distance ?? 0),
+    ];
+  }
+  const unequal = setOut.scales === 'equal' ? equalScaleFindings(document, setOut, fit, impliedScale) : [];
+  if (unequal.some(({ weight }) => weight === 'wrong')) return unequal;
   return [
-    ...scaleFindings(impliedScale, setOut.statedScale),
-    ...(setOut.method === 'points'
-      ? residualFindings(document, similarity, residual)
-      : distanceFindings(document, similarity, setOut.distance ?? 0)),
+    ...unequal,
+    ...(setOut.scales === 'equal' ? [] : declaredFindings(fit)),
+    ...scaleFindings(impliedScale, setOut.statedScale, fit),
+    ...residualFindings(document, fit.map, residual),
+  ];
+}
+
+function equalScaleFindings(
+  document: FlowNetDocument,
+  setOut: EntityOf<'setOut'>,
+  fit: FittedSection,
+  impliedScale: number | null,
+): Finding[] {
+  const { statedScale } = setOut;
+  const scalePerPx =
+    impliedScale === null || statedScale === null || !(statedScale > 0)
+      ? null
+      : (fit.along * statedScale) / impliedScale;
+  return questionEqualScales(controlPairs(entitiesOf(document, 'knownPoint')), fit, setOut, scalePerPx);
+}
+
+function declaredFindings({ along, up }: FittedSection): Finding[] {
+  if (Math.abs(along / up - 1) > EQUAL_PART) return [];
+  return [
+    makeFinding(
+      'question',
+      'scalesEqual',
+      'The drawing is declared to have two scales, but by the known points both are one. Check the typed values and what is declared.',
+      { cell: 'scale' },
+    ),
   ];
 }
 
 /** One mistyped point among several shows in the residual alone: the fit spreads its error over all of them. */
-function residualFindings(
-  document: FlowNetDocument,
-  similarity: Similarity,
-  residual: number | null,
-): Finding[] {
+function residualFindings(document: FlowNetDocument, map: SectionMap, residual: number | null): Finding[] {
   const places = entitiesOf(document, 'knownPoint').map(({ value }) => value.at);
   const range = (axis: 0 | 1) =>
     Math.max(...places.map((at) => at[axis])) - Math.min(...places.map((at) => at[axis]));
-  const extent = Math.hypot(range(0), range(1)) * similarityScale(similarity);
+  const extent = Math.hypot(range(0), range(1)) * map.unitsPerPx;
   if (residual === null || residual <= RESIDUAL_PART * extent) return [];
   const figure = `${fixedText(residual, 2)} ${unitNames(document.unitSystem).length}`;
   return [
@@ -53,9 +91,9 @@ function residualFindings(
 }
 
 /** The fit by a distance takes one elevation and one offset; whatever else is typed has to agree with it. */
-function distanceFindings(document: FlowNetDocument, similarity: Similarity, distance: number): Finding[] {
+function distanceFindings(document: FlowNetDocument, map: SectionMap, distance: number): Finding[] {
   const denied = entitiesOf(document, 'knownPoint').filter(({ value }) => {
-    const [offset, elevation] = similarityForward(similarity, ...value.at);
+    const [offset, elevation] = map.toSection(sheetPx(...value.at));
     const off = Math.max(
       Math.abs(offset - (value.offset ?? offset)),
       Math.abs(elevation - (value.elevation ?? elevation)),
@@ -73,9 +111,15 @@ function distanceFindings(document: FlowNetDocument, similarity: Similarity, dis
   ];
 }
 
-function scaleFindings(impliedScale: number | null, statedScale: number | null): Finding[] {
+/** On a drawing of two scales the stated one may be either. */
+function scaleFindings(
+  impliedScale: number | null,
+  statedScale: number | null,
+  { along, up }: FittedSection,
+): Finding[] {
   if (impliedScale === null || statedScale === null || !(statedScale > 0)) return [];
-  if (Math.abs(impliedScale / statedScale - 1) <= SCALE_TOLERANCE) return [];
+  const implied = [impliedScale, (impliedScale * up) / along];
+  if (implied.some((scale) => Math.abs(scale / statedScale - 1) <= SCALE_TOLERANCE)) return [];
   return [
     makeFinding(
       'question',

@@ -1,11 +1,19 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import type { SetOutFit } from '#shared/compute/set-out.ts';
-import { askOffsets, askUp, departureFromUp, UPRIGHT_LIMIT } from '#shared/compute/set-out-up.ts';
+import { fittedBy, type SetOutFit } from '#shared/compute/set-out-fit.ts';
+import { fitByScales } from '#shared/compute/set-out-scales.ts';
+import {
+  askOffsets,
+  askUp,
+  contradiction,
+  departureFromUp,
+  UPRIGHT_LIMIT,
+} from '#shared/compute/set-out-up.ts';
 import {
   type ControlPair,
   fitSimilarity,
   type Similarity,
   similarityResidual,
+  similarityRotation,
   similarityScale,
 } from '#shared/compute/similarity.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
@@ -19,18 +27,11 @@ const COINCIDENT_PX = 2;
  * Similarity through the known points of use `fit`, least squares. Clicks are base-raster pixels, typed values the
  * document's length unit. Two points, or points on one line, leave the handedness open: then the fit whose up lies
  * near the displayed up is taken, and when that does not settle it the engineer is asked. Three points off one line
- * settle it by their residuals.
+ * settle it by their residuals. A drawing that is declared to have two scales is fitted with two.
  */
 export function fitByPoints(points: readonly KnownPoint[], setOut: EntityOf<'setOut'>): SetOutFit {
-  const used = points.filter(
-    ({ value }) => value.use === 'fit' && value.offset !== null && value.elevation !== null,
-  );
-  const pairs = used.map(
-    ({ value }): ControlPair => ({
-      sheet: value.at,
-      section: [value.offset ?? 0, value.elevation ?? 0],
-    }),
-  );
+  const used = points.filter(isComplete);
+  const pairs = used.map(pairOf);
   if (pairs.length < 2)
     return incomplete(points.filter(({ value }) => value.use === 'fit').length, used.length);
   if (
@@ -39,12 +40,26 @@ export function fitByPoints(points: readonly KnownPoint[], setOut: EntityOf<'set
   ) {
     return coincident(used);
   }
+  if (setOut.scales !== 'equal') return fitByScales(pairs, setOut);
   const direct = fitSimilarity(pairs, false);
   const mirrored = fitSimilarity(pairs, true);
   if (direct === null || mirrored === null || !usable(direct) || !usable(mirrored)) return coincident(used);
   const settled = settledByResiduals(pairs, direct, mirrored);
   if (settled !== null) return heldAgainstAnswers(settled, setOut, pairs.length);
   return settleByUp(direct, mirrored, setOut, pairs.length);
+}
+
+/** The pairs through which a section is set out by points. */
+export function controlPairs(points: readonly KnownPoint[]): ControlPair[] {
+  return points.filter(isComplete).map(pairOf);
+}
+
+function isComplete({ value }: KnownPoint): boolean {
+  return value.use === 'fit' && value.offset !== null && value.elevation !== null;
+}
+
+function pairOf({ value }: KnownPoint): ControlPair {
+  return { sheet: value.at, section: [value.offset ?? 0, value.elevation ?? 0] };
 }
 
 function usable(fit: Similarity): boolean {
@@ -108,11 +123,11 @@ function settledByResiduals(
 
 /** What the points settle by themselves must still agree with the way that is up and the side said: a slip shows there. */
 function heldAgainstAnswers(settled: Similarity, setOut: EntityOf<'setOut'>, fitPoints: number): SetOutFit {
-  if (departureFromUp(settled, setOut) > UPRIGHT_LIMIT)
+  if (departureFromUp(similarityRotation(settled), setOut) > UPRIGHT_LIMIT)
     return setOut.upQuarterTurns === null ? askUp() : contradiction();
   if (setOut.offsetsGrow !== null && (setOut.offsetsGrow === 'left') !== settled.mirrored)
     return contradiction();
-  return { state: 'fitted', similarity: settled, fitPoints };
+  return fittedBy(settled, fitPoints);
 }
 
 function settleByUp(
@@ -123,29 +138,14 @@ function settleByUp(
 ): SetOutFit {
   if (setOut.offsetsGrow !== null) {
     const chosen = setOut.offsetsGrow === 'left' ? mirrored : direct;
-    if (departureFromUp(chosen, setOut) <= UPRIGHT_LIMIT)
-      return { state: 'fitted', similarity: chosen, fitPoints };
+    if (departureFromUp(similarityRotation(chosen), setOut) <= UPRIGHT_LIMIT)
+      return fittedBy(chosen, fitPoints);
     return setOut.upQuarterTurns === null ? askUp() : contradiction();
   }
-  const [first, second] =
-    departureFromUp(direct, setOut) <= departureFromUp(mirrored, setOut)
-      ? [direct, mirrored]
-      : [mirrored, direct];
-  if (departureFromUp(first, setOut) > UPRIGHT_LIMIT)
-    return setOut.upQuarterTurns === null ? askUp() : askOffsets();
+  const departure = (fit: Similarity) => departureFromUp(similarityRotation(fit), setOut);
+  const [first, second] = departure(direct) <= departure(mirrored) ? [direct, mirrored] : [mirrored, direct];
+  if (departure(first) > UPRIGHT_LIMIT) return setOut.upQuarterTurns === null ? askUp() : askOffsets();
   // Both within a right angle of upright: a line through the points steeper than 45 degrees cannot tell.
-  if (departureFromUp(second, setOut) < Math.PI / 2) return askOffsets();
-  return { state: 'fitted', similarity: first, fitPoints };
-}
-
-function contradiction(): SetOutFit {
-  return {
-    state: 'refused',
-    finding: makeFinding(
-      'wrong',
-      'setOutContradiction',
-      'The known points contradict the side to which offsets are said to grow or the way that is said to be up. Check the typed values and both answers.',
-      { cell: 'scale' },
-    ),
-  };
+  if (departure(second) < Math.PI / 2) return askOffsets();
+  return fittedBy(first, fitPoints);
 }

@@ -1,6 +1,5 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import type { SetOutFit } from '#shared/compute/set-out.ts';
-import { type Similarity, similarityRotation } from '#shared/compute/similarity.ts';
+import type { SetOutFit } from '#shared/compute/set-out-fit.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
 
 /** A fit whose up departs from the displayed up by more than this, in radians, does not look upright. */
@@ -8,10 +7,16 @@ export const UPRIGHT_LIMIT = Math.PI / 3;
 
 /**
  * Angle between the section's up and the way that is up on the sheet, radians from 0 to π. The way that is up is
- * the sheet's own up turned clockwise by the stated quarter turns; none stated counts as none.
+ * the sheet's own up turned clockwise by the stated quarter turns; none stated counts as none. `rotation`: turn of the
+ * section's level on the sheet, radians, clockwise positive.
  */
-export function departureFromUp(fit: Similarity, setOut: EntityOf<'setOut'>): number {
-  return Math.abs(wrapped(similarityRotation(fit) - ((setOut.upQuarterTurns ?? 0) * Math.PI) / 2));
+export function departureFromUp(rotation: number, setOut: EntityOf<'setOut'>): number {
+  return Math.abs(wrapped(rotation - upTurn(setOut)));
+}
+
+/** Clockwise turn of the way that is up on the sheet, radians; none stated counts as none. */
+export function upTurn(setOut: EntityOf<'setOut'>): number {
+  return ((setOut.upQuarterTurns ?? 0) * Math.PI) / 2;
 }
 
 /** An angle in radians brought into (−π, π]. */
@@ -40,6 +45,19 @@ export function askOffsets(): SetOutFit {
       'missing',
       'offsetsSideUnknown',
       'The line through the known points is too steep to tell the side. Say whether offsets grow to the left or to the right.',
+      { cell: 'scale' },
+    ),
+  };
+}
+
+/** The answer to known points that deny what is said of the side or of the way that is up. */
+export function contradiction(): SetOutFit {
+  return {
+    state: 'refused',
+    finding: makeFinding(
+      'wrong',
+      'setOutContradiction',
+      'The known points contradict the side to which offsets are said to grow or the way that is said to be up. Check the typed values and both answers.',
       { cell: 'scale' },
     ),
   };

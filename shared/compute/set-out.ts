@@ -1,14 +1,11 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import { type SectionMap, sectionMapOf } from '#shared/compute/section-map.ts';
+import { sheetPx } from '#shared/compute/frames.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
 import { fitByDistance } from '#shared/compute/set-out-distance.ts';
 import { setOutFindings } from '#shared/compute/set-out-findings.ts';
+import type { FittedSection, SetOutFit } from '#shared/compute/set-out-fit.ts';
 import { fitByPoints } from '#shared/compute/set-out-points.ts';
-import {
-  type Similarity,
-  similarityResidual,
-  similarityRotation,
-  similarityScale,
-} from '#shared/compute/similarity.ts';
+import { distanceGivesOneScale } from '#shared/compute/set-out-scales.ts';
 import { metresPerLengthUnit } from '#shared/compute/units.ts';
 import { type EntityOf, entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, SetOutReading } from '#shared/contract/reading.ts';
@@ -18,18 +15,16 @@ const METRES_PER_INCH = 0.0254;
 export type SetOut = {
   reading: SetOutReading;
   map: SectionMap | null;
-  similarity: Similarity | null;
+  /** kh/kv that unequal scales imply where the section is drawn transformed; null elsewhere. */
+  impliedRatio: number | null;
   findings: Finding[];
 };
-
-/** What a way of setting out comes to: a similarity, or the reason why there is none yet. */
-export type SetOutFit =
-  | { state: 'fitted'; similarity: Similarity; fitPoints: number }
-  | { state: 'incomplete' | 'ambiguous' | 'refused'; finding: Finding };
 
 const NOTHING: SetOutReading = {
   state: 'incomplete',
   unitsPerPx: null,
+  unitsPerPxUp: null,
+  exaggeration: null,
   rotationDeg: null,
   offsetsGrowLeft: null,
   residual: null,
@@ -39,7 +34,7 @@ const NOTHING: SetOutReading = {
 
 /**
  * Sets the section of a document out from its known points: scale, rotation, handedness, residuals, and the map
- * between sheet and section.
+ * between sheet and section. One scale, or two where the drawing is declared to have two.
  *
  * Clicks are base-raster pixels as given (y down), offsets and elevations the document's length unit; residuals are
  * fitted minus given in that unit. The parameters are worked out afresh each time and never stored. Degenerate
@@ -61,45 +56,56 @@ export function readSetOut(document: FlowNetDocument): SetOut {
       ),
     );
   }
-  const points = entitiesOf(document, 'knownPoint');
-  const fit = setOut.method === 'points' ? fitByPoints(points, setOut) : fitByDistance(points, setOut);
+  const fit = fitOf(document, setOut);
   if (fit.state !== 'fitted') return withoutMap(fit.state, fit.finding);
-  return withMap(document, fit.similarity, fit.fitPoints, setOut);
+  return withMap(document, fit.fit, fit.fitPoints, setOut);
+}
+
+function fitOf(document: FlowNetDocument, setOut: EntityOf<'setOut'>): SetOutFit {
+  const points = entitiesOf(document, 'knownPoint');
+  if (setOut.method === 'points') return fitByPoints(points, setOut);
+  return setOut.scales === 'equal' ? fitByDistance(points, setOut) : distanceGivesOneScale();
 }
 
 function withoutMap(state: SetOutReading['state'], finding: Finding): SetOut {
-  return { reading: { ...NOTHING, state }, map: null, similarity: null, findings: [finding] };
+  return { reading: { ...NOTHING, state }, map: null, impliedRatio: null, findings: [finding] };
 }
 
 function withMap(
   document: FlowNetDocument,
-  similarity: Similarity,
+  fit: FittedSection,
   fitPoints: number,
   setOut: EntityOf<'setOut'>,
 ): SetOut {
-  const unitsPerPx = similarityScale(similarity);
-  const { residuals, residual } = residualsOf(document, similarity, fitPoints);
+  const { residuals, residual } = residualsOf(document, fit.map, fitPoints);
   const { dpi } = document.sheet;
   const impliedScale =
-    dpi === null ? null : (unitsPerPx * metresPerLengthUnit(document.unitSystem) * dpi) / METRES_PER_INCH;
-  const figures = [residual, impliedScale, ...residuals.flatMap((each) => [each.offset, each.elevation])];
+    dpi === null ? null : (fit.along * metresPerLengthUnit(document.unitSystem) * dpi) / METRES_PER_INCH;
+  const figures = [
+    fit.along,
+    fit.up,
+    residual,
+    impliedScale,
+    ...residuals.flatMap((each) => [each.offset, each.elevation]),
+  ];
   if (!figures.every((figure) => figure === null || Number.isFinite(figure))) {
     return withoutMap('refused', tooLarge());
   }
-  const findings = setOutFindings(document, setOut, similarity, residual, impliedScale);
   return {
     reading: {
       state: 'fitted',
-      unitsPerPx,
-      rotationDeg: (similarityRotation(similarity) * 180) / Math.PI,
-      offsetsGrowLeft: similarity.mirrored,
+      unitsPerPx: fit.along,
+      unitsPerPxUp: fit.up,
+      exaggeration: fit.along / fit.up,
+      rotationDeg: (fit.rotation * 180) / Math.PI,
+      offsetsGrowLeft: fit.mirrored,
       residual,
       residuals,
       impliedScale,
     },
-    map: sectionMapOf(similarity),
-    similarity,
-    findings,
+    map: fit.map,
+    impliedRatio: setOut.scales === 'transformedSection' ? (fit.along / fit.up) ** 2 : null,
+    findings: setOutFindings(document, setOut, fit, residual, impliedScale),
   };
 }
 
@@ -112,16 +118,14 @@ function tooLarge(): Finding {
   );
 }
 
-function residualsOf(document: FlowNetDocument, similarity: Similarity, fitPoints: number) {
+function residualsOf(document: FlowNetDocument, map: SectionMap, fitPoints: number) {
   const residuals: SetOutReading['residuals'] = [];
   let square = 0;
   let counted = 0;
   for (const { id, value } of entitiesOf(document, 'knownPoint')) {
     if (value.offset === null || value.elevation === null) continue;
-    const [offset, elevation] = similarityResidual(similarity, {
-      sheet: value.at,
-      section: [value.offset, value.elevation],
-    });
+    const fitted = map.toSection(sheetPx(...value.at));
+    const [offset, elevation] = [fitted[0] - value.offset, fitted[1] - value.elevation];
     residuals.push({ id, offset, elevation });
     // Two points are met exactly by their own fit: counting them would only make the checks look better.
     if (value.use === 'fit' && fitPoints <= 2) continue;

@@ -58,8 +58,8 @@ export function similarityBackward(
  * coincide. Source: closed-form two-dimensional conformal fit (Ghilani and Wolf, Adjustment Computations, ch. 18).
  */
 export function fitSimilarity(pairs: readonly ControlPair[], mirrored: boolean): Similarity | null {
-  const sheetOrigin = meanOf(pairs.map((pair) => pair.sheet));
-  const sectionOrigin = meanOf(pairs.map((pair) => pair.section));
+  const sheetOrigin = centroidOf(pairs.map((pair) => pair.sheet));
+  const sectionOrigin = centroidOf(pairs.map((pair) => pair.section));
   let re = 0;
   let im = 0;
   let square = 0;
@@ -95,7 +95,8 @@ export function similarityResidual(map: Similarity, pair: ControlPair): [offset:
   return [offset - pair.section[0], elevation - pair.section[1]];
 }
 
-function meanOf(points: ReadonlyArray<readonly [number, number]>): [number, number] {
+/** Mean of places; the first is taken off before the sum, so that large coordinates lose no figures. */
+export function centroidOf(points: ReadonlyArray<readonly [number, number]>): [number, number] {
   const first = points[0] ?? [0, 0];
   let x = 0;
   let y = 0;

@@ -23,22 +23,24 @@ const NATURAL: CommonAnisotropy = { kind: 'natural', ratio: 1, dipDeg: 0 };
 const NONE: CommonAnisotropy = { kind: 'none', ratio: 1, dipDeg: 0 };
 
 /**
- * kh/kv of a soil: as typed, `implied` where kv is left open (1, or what a transformed section implies). A soil whose kh
- * is open has no ratio of its own but the implied one.
+ * kh/kv of a soil as typed; where kv is left open, `implied` by a section that is drawn transformed, or else 1. A soil
+ * whose kh is open has no ratio of its own.
  */
-export function ratioOf({ k, kv }: Permeable, implied: number): number {
-  if (k === null || kv === null) return implied;
-  const ratio = k / kv;
-  return Number.isFinite(ratio) && ratio > 0 ? ratio : implied;
+export function ratioOf({ k, kv }: Permeable, implied: number | null): number {
+  if (k === null || kv === null) return implied ?? 1;
+  return k / kv;
 }
 
 /**
  * The one anisotropy of several soils. Their transformed sections coincide when kh/kv and dip are one for all (Samsioe
  * 1931; Casagrande 1937, Seepage through dams, section on anisotropic soils); dips mean nothing where kh = kv. No soil
- * counts as isotropic.
+ * counts as isotropic. Where the section is drawn transformed, `implied` is the kh/kv for which it was drawn, along a
+ * level bedding, and holds whatever is typed: the drawing is not transformed again.
  */
-export function commonAnisotropy(soils: readonly Permeable[], implied = 1): CommonAnisotropy {
-  const each = soils.map((soil) => ({ ratio: ratioOf(soil, implied), dipDeg: soil.dipDeg }));
+export function commonAnisotropy(soils: readonly Permeable[], implied: number | null): CommonAnisotropy {
+  if (implied !== null)
+    return isPlausible(implied) ? { kind: 'transformed', ratio: implied, dipDeg: 0 } : NONE;
+  const each = soils.map((soil) => ({ ratio: ratioOf(soil, null), dipDeg: soil.dipDeg }));
   const [first] = each;
   if (first === undefined) return NATURAL;
   if (each.every(({ ratio }) => isOne(ratio))) return NATURAL;

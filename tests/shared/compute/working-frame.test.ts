@@ -102,13 +102,19 @@ describe('working pixels', () => {
   });
 });
 
+/** The mesh between the lines depends a little on where the sheet's pixels fall. */
+const SAME_FIELD = 2e-3;
+
 function figuresOf(reading: NetReading) {
   expect(reading.state, reading.findings.map((found) => found.text).join(' ')).toBe('read');
-  return reading.points.map(({ totalHead }) => totalHead ?? Number.NaN);
+  return reading.points.map(({ byHand, byField }) => ({
+    byHand: byHand?.totalHead ?? Number.NaN,
+    byField: byField?.totalHead ?? Number.NaN,
+  }));
 }
 
 describe.each(EXACT_NETS)('an anisotropic section: $name', ({ net, pxPerUnit }) => {
-  const readings = randomReadings(net, 25, 8, 0.1);
+  const readings = randomReadings(net, 10, 8, 0.1);
 
   it('drawn to natural scale reads as its transformed section does', () => {
     fc.assert(
@@ -144,8 +150,9 @@ describe.each(EXACT_NETS)('an anisotropic section: $name', ({ net, pxPerUnit }) 
           const read = readNet(natural);
           const heads = figuresOf(expected);
           const drop = expected.quantities.headPerDrop ?? 1;
-          figuresOf(read).forEach((head, i) => {
-            expect(Math.abs(head - heads[i]!) / drop).toBeLessThan(1e-6);
+          figuresOf(read).forEach(({ byHand, byField }, i) => {
+            expect(Math.abs(byHand - heads[i]!.byHand) / drop).toBeLessThan(1e-6);
+            expect(Math.abs(byField - heads[i]!.byField) / drop).toBeLessThan(SAME_FIELD);
           });
           read.points.forEach(({ sheetAt, offset }, i) => {
             const other = expected.points[i]!;
@@ -155,7 +162,7 @@ describe.each(EXACT_NETS)('an anisotropic section: $name', ({ net, pxPerUnit }) 
           });
         },
       ),
-      { numRuns: 6 },
+      { numRuns: 4 },
     );
   });
 });
