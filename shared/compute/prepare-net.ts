@@ -1,3 +1,4 @@
+import { cellsOf, type NetCells } from '#shared/compute/cells/cells.ts';
 import { fieldsOnDemand } from '#shared/compute/field/strip-fields.ts';
 import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
@@ -20,6 +21,8 @@ import { questionSoils } from '#shared/compute/net/soil-boundaries.ts';
 import { solidBodies } from '#shared/compute/net/solid-bodies.ts';
 import { questionUpstream } from '#shared/compute/net/upstream-side.ts';
 import { checkWaterline } from '#shared/compute/net/waterline.ts';
+import { netCheckOf } from '#shared/compute/net-check/net-check.ts';
+import { questionNetCheck } from '#shared/compute/net-check/net-check-findings.ts';
 import { readPhreatic } from '#shared/compute/phreatic/read-phreatic.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { SetOut } from '#shared/compute/set-out.ts';
@@ -34,6 +37,7 @@ import {
 } from '#shared/compute/working-frame.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, NetReading } from '#shared/contract/reading.ts';
+import type { NetCheckReading } from '#shared/contract/reading-net-check.ts';
 import type { PhreaticReading } from '#shared/contract/reading-phreatic.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
 
@@ -48,9 +52,12 @@ export type PreparedNet = {
   readonly working: FlowNetDocument;
   readonly model: NetModel;
   readonly heads: NetHeads;
+  readonly cells: NetCells;
   readonly ground: ReadingGround;
   readonly quantities: NetReading['quantities'];
   readonly findings: readonly Finding[];
+  /** Its places are on the sheet. */
+  readonly netCheck: NetCheckReading;
   /** In the working frame; null in a section without a phreatic line. */
   readonly phreatic: PhreaticReading | null;
   /** True when nothing is missing or wrong, so that figures may be given. */
@@ -93,6 +100,19 @@ export function prepareNet(
     inputs,
     document.unitSystem,
   );
+  const cells = cellsOf(model, count.tracingAccuracyPx);
+  const netCheck = netCheckOf({
+    model,
+    cells,
+    heads,
+    enteredRatio: count.cellRatio,
+    accuracyPx: count.tracingAccuracyPx,
+    gammaW: water.gammaW,
+    quantities,
+    relativeK: relativeKOf(working),
+    hasCommonSection: frame.kind !== 'none',
+    toSheet: frame.toSheet,
+  });
   const phreatic = readPhreatic(model, heads, map, count.tracingAccuracyPx, levelUnit);
   const netFindings = [
     ...model.findings,
@@ -109,13 +129,19 @@ export function prepareNet(
     ...channels.findings,
     ...quantityFindings,
   ];
-  const findings = [...setOut.findings, ...netFindings.map((found) => findingOnSheet(found, frame))];
+  const findings = [
+    ...setOut.findings,
+    ...netFindings.map((found) => findingOnSheet(found, frame)),
+    ...questionNetCheck(netCheck, document.unitSystem),
+  ];
   const finished = !withholdsFigures(findings) && heads.count !== null;
   return {
     frame,
     working,
     model,
     heads,
+    cells,
+    netCheck,
     ground: groundOf(model, heads, setOut, map, inputs, levelUnit),
     quantities,
     findings,
@@ -132,6 +158,12 @@ function anisotropyOf(
 ): CommonAnisotropy {
   const soils = entitiesOf(document, 'soil').filter(({ value }) => value.places.length > 0);
   return commonAnisotropy([inputs.permeability, ...soils.map(({ value }) => value)], impliedRatio);
+}
+
+/** One soil for all cells; where several are placed, which of them a cell lies in is not known here. */
+function relativeKOf(document: FlowNetDocument): () => number | null {
+  const several = entitiesOf(document, 'soil').some(({ value }) => value.places.length > 0);
+  return () => (several ? null : 1);
 }
 
 /** Pixels by which a traced line may miss what it is meant to meet. */

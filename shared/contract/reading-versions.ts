@@ -46,11 +46,12 @@ type FirstQuantities =
   | 'seepageFigures'
   | 'gammaW';
 
-const ADDED_TO_READING: Omit<NetReading, FirstReading> = {};
+const ADDED_TO_READING: Omit<NetReading, FirstReading> = {
+  phreatic: null,};
 const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = { unitsPerPxUp: null, exaggeration: null };
 const ADDED_TO_LINE: Omit<NetReading['lines'][number], FirstLine> = {};
 const ADDED_TO_POINT: Omit<PointReading, FirstPoint> = { byHand: null, byField: null };
-const ADDED_TO_QUANTITIES: Omit<Quantities, FirstQuantities> = {};
+const ADDED_TO_QUANTITIES: Omit<Quantities, FirstQuantities> = { shapeFactor: null, outlets: [] };
 
 /**
  * Completes a reading that was frozen by an earlier engine, as parsed JSON, so that it can be shown: what that engine

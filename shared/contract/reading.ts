@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import { phreaticReading } from './reading-phreatic.ts';
 
 /**
  * What `readNet` returns and the schedule, the title block, the API and the command line show. Heads and
@@ -111,6 +112,24 @@ export const pointReading = z.object({
 });
 export type PointReading = z.infer<typeof pointReading>;
 
+/** Where water leaves: the head there, and what is lost and what arrives on the way to it. */
+export const outletReading = z.object({
+  /** The traced boundary, and all the lines of which it is made. */
+  id: z.string(),
+  members: z.array(z.string()),
+  label: z.string(),
+  /** Head that the water has when it has left: the level, or the lowest elevation of a face of free outflow. */
+  head: z.number(),
+  headLost: z.nullable(z.number()),
+  /** Drops from the headwater to it, parts of a drop included. */
+  drops: z.nullable(z.number()),
+  /** Channels that arrive; negative where it gives more water than it takes. Null when the lines do not tell. */
+  channels: z.nullable(z.number()),
+  /** q = k·Δh·Nf·(B/L) of those channels, m³/s per metre (SI) or ft³/s per foot (US). */
+  seepage: z.nullable(z.number()),
+});
+export type OutletReading = z.infer<typeof outletReading>;
+
 /** What is added here needs its value for readings frozen before, in `reading-versions.ts`. */
 export const netReading = z.object({
   state: z.enum(['read', 'unfinished']),
@@ -119,11 +138,14 @@ export const netReading = z.object({
   lines: z.array(lineReading),
   points: z.array(pointReading),
   quantities: z.object({
-    /** Nd as stated or counted; null with several outlets or while unfinished. */
+    /** Nd as stated or counted; null while unfinished and with outlets at several heads, which have their own below. */
     drops: z.nullable(z.number()),
-    /** What the traced lines amount to, to propose it. */
+    /** What the traced lines amount to, to the lowest outlet, to propose it. */
     tracedDrops: z.nullable(z.number()),
+    /** Nf of the whole flow from the headwater. */
     channels: z.nullable(z.number()),
+    /** Nf/Nd; null while either is not known, where the intervals are unequal, and without a single Nd. */
+    shapeFactor: z.nullable(z.number()),
     /** False when an outermost traced flow line is no real boundary: then the figure is "traced channels only". */
     channelsComplete: z.boolean(),
     headLost: z.nullable(z.number()),
@@ -135,6 +157,9 @@ export const netReading = z.object({
     /** Significant figures that k deserves. */
     seepageFigures: z.number(),
     gammaW: z.nullable(z.number()),
+    /** The outlets that the flow reaches, the lowest first; none while unfinished. */
+    outlets: z.array(outletReading),
   }),
+  phreatic: z.nullable(phreaticReading),
 });
 export type NetReading = z.infer<typeof netReading>;

@@ -1,5 +1,11 @@
 import type { EdgeKind } from '#shared/compute/field/node-edges.ts';
-import { nearestOnPolyline, polylineOf, verticesOf } from '#shared/compute/geometry/polyline.ts';
+import {
+  firstOf,
+  lastOf,
+  nearestOnPolyline,
+  polylineOf,
+  verticesOf,
+} from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { thinned } from '#shared/compute/geometry/thin.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
@@ -26,7 +32,12 @@ export type Sizes = {
 
 /** Sizes of the elements of a strip with `inner` walls: a part of its width, finer towards tips and sharp corners. */
 export function sizesOf(strip: Strip, inner: readonly Pair[][], slack: number): Sizes {
-  const steep = [...steepCorners(strip, slack), ...inner.flatMap((points) => thinned(points, 3 * slack))];
+  const steep = [
+    ...steepCorners(strip, slack),
+    // A boundary held beside the way begins and ends where the flow turns from one to the other.
+    ...strip.held.flatMap(({ shape }) => [firstOf(shape), lastOf(shape)]),
+    ...inner.flatMap((points) => thinned(points, 3 * slack)),
+  ];
   // The width is wanted roughly: the lines without their bends are a tenth as many segments.
   const before = polylineOf(thinned(verticesOf(strip.beforeShape), slack)) ?? strip.beforeShape;
   const after = polylineOf(thinned(verticesOf(strip.afterShape), slack)) ?? strip.afterShape;

@@ -11,14 +11,14 @@ import {
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
 /**
- * A line on which equipotentials may end: the real boundaries, and flow lines where no boundary is traced. `held`: a
- * boundary with one head, on which an equipotential of that head may end beside the parting of the flow.
+ * A line on which equipotentials may end: the real boundaries, and flow lines where no boundary is traced. `held` marks
+ * boundaries with heads: a free face, or one with a single head, on which an equipotential of that head may end.
  */
 export type Carrier = {
   readonly id: string;
   readonly shape: Polyline;
   readonly real: boolean;
-  readonly held?: true;
+  readonly held?: 'alongIt' | 'atOneHead';
 };
 
 /** Where an equipotential ends on a carrier: distance along the carrier in pixels, the place, real boundary or not. */
@@ -54,8 +54,8 @@ function footAt(
   near: number,
 ): FoundFoot | null {
   const turns = [
-    carriers.filter(({ real, held }) => real && !held),
-    carriers.filter(({ held }) => held),
+    carriers.filter(({ real, held }) => real && held !== 'atOneHead'),
+    carriers.filter(({ held }) => held === 'atOneHead'),
     carriers.filter(({ real }) => !real),
   ];
   for (const carriersInTurn of turns) {

@@ -8,8 +8,12 @@ export type FlowPath = {
   readonly outlet: string;
 };
 
-/** A boundary that the flow passes beside, and the last line before it. */
-export type PassedBoundary = { readonly boundary: string; readonly after: string | null };
+/** A boundary that the flow passes beside, the last line before it, and the lines round the ground it bounds there. */
+export type PassedBoundary = {
+  readonly boundary: string;
+  readonly after: string | null;
+  readonly lines: readonly string[];
+};
 
 type Arrival = {
   readonly region: WalkedRegion;
@@ -74,7 +78,7 @@ function passedBoundaries(
         ({ id }) =>
           region.sides.length > 0 && !arrivals.some((each) => each.region === region && each.outlet === id),
       )
-      .map(({ id }) => ({ boundary: id, after: region.via })),
+      .map(({ id }) => ({ boundary: id, after: region.via, lines: region.sides.map((side) => side.id) })),
   );
 }
 

@@ -102,10 +102,12 @@ function carriersOf(
   const lowest = Math.min(...outlets.map(({ outHead }) => outHead));
   return [
     ...walls.map((line) => ({ id: line.id, shape: line.shape, real: true })),
-    ...outlets.filter(({ level }) => level === null).map(({ id, shape }) => ({ id, shape, real: true })),
+    ...outlets
+      .filter(({ level }) => level === null)
+      .map(({ id, shape }): Carrier => ({ id, shape, real: true, held: 'alongIt' })),
     ...outlets
       .filter(({ level, outHead }) => level !== null && outHead > lowest)
-      .map(({ id, shape }): Carrier => ({ id, shape, real: true, held: true })),
+      .map(({ id, shape }): Carrier => ({ id, shape, real: true, held: 'atOneHead' })),
     ...flowLines.map((line) => ({ id: line.id, shape: line.shape, real: false })),
   ];
 }
@@ -144,7 +146,7 @@ function stripsOf(
       const graph =
         beside.length === 0
           ? plain
-          : graphWith(beside.map(({ id, shape }) => ({ id, shape, real: true, held: true })));
+          : graphWith(beside.map(({ id, shape }) => ({ id, shape, real: true, held: 'atOneHead' })));
       return stripBetween(stripLines.get(pair.before)!, stripLines.get(pair.after)!, pair, graph, others);
     })
     .filter((strip) => strip !== null);

@@ -1,4 +1,4 @@
-import { type FlowPath, flowPaths } from '#shared/compute/net/flow-paths.ts';
+import { type FlowPath, flowPaths, type PassedBoundary } from '#shared/compute/net/flow-paths.ts';
 import type { HeadLine, NeighbourLink } from '#shared/compute/net/neighbours.ts';
 import { type FlowRegion, regionsOf } from '#shared/compute/net/regions.ts';
 import { type Walk, walkRegions } from '#shared/compute/net/walk-regions.ts';
@@ -19,8 +19,8 @@ export type FlowOrder = {
   readonly pairs: readonly OrderedPair[];
   /** Ways of the water from a boundary that gives it to one that takes it; the first leads to the lowest outlet. */
   readonly paths: readonly FlowPath[];
-  /** Boundaries that the flow passes beside, each with the last line before it; null when there is none. */
-  readonly passed: ReadonlyArray<{ readonly boundary: string; readonly after: string | null }>;
+  /** Boundaries that the flow passes beside. */
+  readonly passed: readonly PassedBoundary[];
   /** Equipotentials in the order in which the flow meets them, those of the first path first. */
   readonly sequence: readonly string[];
   /** Equipotentials that the flow from the headwater does not reach. */

@@ -1,6 +1,9 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import type { ChannelCount } from '#shared/compute/net/channels.ts';
 import type { NetHeads } from '#shared/compute/net/net-heads.ts';
+import type { FlowOrder } from '#shared/compute/net/order.ts';
+import { channelsInto } from '#shared/compute/net/outlet-flows.ts';
+import type { Potential } from '#shared/compute/net/potentials.ts';
 import { figuresOf, kPerSecondOf, seepagePerRun } from '#shared/compute/net/seepage.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
@@ -8,34 +11,45 @@ import type { Finding, NetReading } from '#shared/contract/reading.ts';
 
 type Quantities = NetReading['quantities'];
 
+/** A net in order, counted; null while there is none. */
+export type CountedNet = {
+  readonly order: FlowOrder;
+  readonly heads: NetHeads;
+  readonly channels: ChannelCount;
+};
+
 /**
- * The quantities of the net: drops, channels, head lost and per drop, seepage per run of dam. Lengths in the document's
- * unit, seepage in m³/s per m or ft³/s per ft. What cannot be given is null: everything that hangs on the count while
- * the count does not stand, head per drop and seepage where the intervals are unequal.
+ * The quantities of the net: drops, channels, shape factor Nf/Nd, head lost and per drop, seepage per run of dam, and
+ * each outlet's own share. Lengths in the document's unit, seepage in m³/s per m or ft³/s per ft. What cannot be given is
+ * null: everything that hangs on the count while the count does not stand, head per drop and seepage where the intervals
+ * are unequal, and the single count of drops where the outlets lie at different heads: each outlet has its own.
  */
 export function quantitiesOf(
-  heads: NetHeads | null,
-  channels: ChannelCount | null,
+  net: CountedNet | null,
   inputs: SingleInputs,
   system: UnitSystem,
 ): { quantities: Quantities; findings: Finding[] } {
+  const heads = net?.heads ?? null;
+  const channels = net?.channels ?? null;
   const count = heads?.count ?? null;
-  const stands = count !== null && count.headPerDrop !== null && count.findings.length === 0;
-  const drops = stands ? inputs.count.drops : null;
+  const stands = count !== null && count.headPerDrop !== null && heads?.findings.length === 0;
+  const statedDrops = stands ? inputs.count.drops : null;
+  const drops = heads?.several ? null : statedDrops;
   const headLost =
     heads?.headwater == null || heads.outHead === null ? null : finiteOrNull(heads.headwater - heads.outHead);
   const nf = inputs.count.channels ?? channels?.counted ?? null;
   const equal = stands && !count.unequal;
   const k = kPerSecondOf(inputs.permeability, system);
   const seepage =
-    equal && k !== null && nf !== null && drops !== null && headLost !== null
-      ? finiteOrNull(seepagePerRun(k, headLost, nf, drops, inputs.count.cellRatio))
+    equal && k !== null && nf !== null && statedDrops !== null && headLost !== null
+      ? finiteOrNull(seepagePerRun(k, headLost, nf, statedDrops, inputs.count.cellRatio))
       : null;
   return {
     quantities: {
       drops,
       tracedDrops: count?.tracedDrops ?? null,
       channels: nf,
+      shapeFactor: equal && drops !== null && nf !== null ? finiteOrNull(nf / drops) : null,
       // A count that is stated beside no flow line at all is the engineer's, of the whole flow.
       channelsComplete: channels?.counted == null ? nf !== null : channels.complete,
       headLost,
@@ -44,8 +58,37 @@ export function quantitiesOf(
       seepage,
       seepageFigures: figuresOf(inputs.permeability),
       gammaW: inputs.water.gammaW,
+      outlets:
+        net !== null && stands ? net.heads.outlets.map((outlet) => outletOf(outlet, net, inputs, k)) : [],
     },
     findings: quantityFindings(channels, inputs, stands && count.unequal),
+  };
+}
+
+function outletOf(
+  { id, members, label, outHead }: Potential,
+  { order, heads, channels }: CountedNet,
+  inputs: SingleInputs,
+  k: number | null,
+): Quantities['outlets'][number] {
+  const single = heads.outlets.length === 1;
+  const into = single
+    ? (inputs.count.channels ?? channels.counted)
+    : channelsInto(id, order, channels, heads, inputs.count.channels);
+  const headPerDrop = heads.count?.unequal === false ? heads.count.headPerDrop : null;
+  const seepage =
+    k === null || into === null || headPerDrop === null
+      ? null
+      : finiteOrNull(seepagePerRun(k, headPerDrop, into, 1, inputs.count.cellRatio));
+  return {
+    id,
+    members: [...members],
+    label,
+    head: outHead,
+    headLost: heads.headwater === null ? null : finiteOrNull(heads.headwater - outHead),
+    drops: finiteOrNull(heads.byId.get(id)?.drops ?? Number.NaN),
+    channels: into,
+    seepage,
   };
 }
 

@@ -94,7 +94,7 @@ function outlined(before: StripLine, far: StripLine, graph: CarrierGraph, limit:
   });
   const ways = [between(start, 0, 0), between(end, lengthOf(beforeShape), lengthOf(afterShape))];
   const held = [...start.stretches, ...end.stretches].flatMap(({ carrier, points }) => {
-    const shape = carrier.held ? polylineOf(points) : null;
+    const shape = carrier.held === 'atOneHead' ? polylineOf(points) : null;
     return shape === null ? [] : [{ id: carrier.id, shape }];
   });
   return { before: before.id, after: far.id, beforeShape, afterShape, ring, ways, held };
