@@ -43,6 +43,19 @@ export const setOutText = {
   },
   statedScale: 'Scale on the drawing, 1 :',
   statedScaleHint: 'To compare with the fit; empty when the drawing states none.',
+  scales: 'Scales of the drawing',
+  scalesNames: {
+    equal: 'one scale for both directions',
+    plottingExaggeration: 'stretched for plotting only',
+    transformedSection: 'drawn transformed for its anisotropy',
+  },
+  scalesHint: {
+    equal: 'Say so when heights are drawn to another scale than lengths.',
+    plottingExaggeration:
+      'The net was drawn for the ground as it is, and the picture was stretched afterwards.',
+    transformedSection:
+      'The net was drawn in squares on the transformed section: kh/kv is the square of the ratio of the two scales.',
+  },
   result: 'Fit',
   scale: (scale: string) => `Scale ${scale}`,
   implied: (scale: string) => `which is 1 : ${scale} at the scan’s resolution`,
@@ -84,12 +97,22 @@ export const waterText = {
     own: 'water comes out freely: its own elevation',
     unsaid: 'not said whose level it carries',
   },
+  doubtTitle: 'How well they are known, ±',
+  doubtLead:
+    'Half of the range that holds the true value with 95 %. Empty: not said. An error of the datum is common to levels and tips and cancels in the pressure.',
+  doubts: {
+    headwaterPlusMinus: (unit: string) => `Headwater ±, ${unit}`,
+    tailwaterPlusMinus: (unit: string) => `Tailwater ±, ${unit}`,
+    gammaWPlusMinus: (unit: string) => `γw ±, ${unit}`,
+    datumPlusMinus: (unit: string) => `Datum ±, ${unit}`,
+  },
+  doubtTooSmall: 'A ± cannot be below zero.',
   labels: { levels: 'changed the water levels' },
 } as const;
 
 export const permeabilityText = {
   title: 'Permeability',
-  lead: 'Used for the seepage only; heads and pressures do not depend on it in a section of one soil.',
+  lead: 'In a section of one soil, alike in all directions, only the seepage depends on it. Where soils differ, or k across the bedding is another, heads and pressures depend on the ratios too.',
   k: 'Permeability k',
   kHint: 'Type 2e-7 for 2 × 10 to the power −7.',
   unit: 'Unit',
@@ -105,7 +128,49 @@ export const permeabilityText = {
   factor: 'Known within a factor of (×/÷)',
   factorHint: '1 or more; empty when it is not known.',
   factorTooSmall: 'The factor has to be 1 or more.',
+  kv: (unit: string) => `Permeability across the bedding, kv, ${unit}`,
+  kvHint: 'Empty: as k. Otherwise k above is the one along the bedding, kh.',
+  dip: 'Dip of the bedding, degrees',
+  dipHint: '0 when it is level; positive where it falls towards growing offsets.',
+  dipFault: 'The dip lies between −90 and 90 degrees.',
+  weightsTitle: 'Weights',
+  weightsLead:
+    'For heave, critical gradient and the ratio r_u. Gs and e stand in where the saturated weight is not known.',
+  weights: {
+    saturatedUnitWeight: (unit: string) => `Saturated γ, ${unit}`,
+    moistUnitWeight: (unit: string) => `Moist γ, ${unit}`,
+    specificGravity: () => 'Specific gravity of grains, Gs',
+    voidRatio: () => 'Void ratio, e',
+  },
   label: 'changed the permeability',
+} as const;
+
+export const soilText = {
+  listTitle: 'Soils of their own',
+  listLead: 'Regions between traced soil boundaries whose soil is another than the one above.',
+  add: 'Add a soil',
+  freeName: (n: number) => `Soil ${n}`,
+  unnamed: 'unnamed soil',
+  placeCount: (count: number) =>
+    count === 0 ? 'lies nowhere yet' : count === 1 ? 'in 1 region' : `marked at ${count} places`,
+  name: 'Name',
+  places: 'Where it lies',
+  noPlaces: 'Nowhere yet. Mark one place inside each region of this soil.',
+  placeName: (n: number) => `place ${n}`,
+  placeAt: (n: number, x: string, y: string) => `Place ${n} at ${x}, ${y} px`,
+  mark: 'Mark a place on the sheet',
+  typed: 'Or type a place inside the region',
+  offset: (unit: string) => `Offset, ${unit}`,
+  elevation: (unit: string) => `Elevation, ${unit}`,
+  addPlace: 'Add the place',
+  remove: 'Remove this soil',
+  labels: {
+    added: (name: string) => `added the soil ${name}`,
+    changed: (name: string) => `changed the soil ${name}`,
+    removed: (name: string) => `removed the soil ${name}`,
+    placed: (name: string) => `marked a place of the soil ${name}`,
+    placeRemoved: (name: string) => `removed a place of the soil ${name}`,
+  },
 } as const;
 
 export const countText = {
@@ -119,6 +184,9 @@ export const countText = {
   channelsHint: 'Empty: counted from the traced flow lines along one equipotential.',
   cellRatio: 'Width of a cell across the flow over its length along it, B/L',
   cellRatioHint: '1 when the cells are squares.',
+  countedIn: 'Channels are counted in',
+  countedInHint: 'Squares in one soil are rectangles in the next, so the seepage is counted in one of them.',
+  sectionSoil: 'the soil of the section',
   tracing: 'Accuracy of tracing, px',
   knownPoints: 'Accuracy of the known points, px',
   accuracyHint: 'For the provisional ±.',

@@ -1,9 +1,9 @@
 import { Button } from '#client/components/button.tsx';
-import { countText as text } from '#client/text/desk-forms.ts';
-import { type EntityOf, singleOf } from '#shared/contract/document.ts';
+import { soilText, countText as text } from '#client/text/desk-forms.ts';
+import { type EntityOf, entitiesOf, singleOf } from '#shared/contract/document.ts';
 import { plainText } from '#shared/text/number-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
-import { Figure, NeededFigure } from './form-fields.tsx';
+import { Choice, Figure, NeededFigure } from './form-fields.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
 
 /** What the engineer counted on the drawing, beside what the traced lines amount to. */
@@ -54,6 +54,7 @@ export function CountForm({ document, reading, disabled, run, onClose }: DeskFor
         disabled={disabled}
         onCommit={(next) => change({ cellRatio: next })}
       />
+      <CountedIn document={document} countedIn={held.value.countedIn} disabled={disabled} change={change} />
       <NeededFigure
         label={text.tracing}
         value={tracingAccuracyPx}
@@ -70,5 +71,33 @@ export function CountForm({ document, reading, disabled, run, onClose }: DeskFor
         onCommit={(next) => change({ knownPointAccuracyPx: next })}
       />
     </FormPane>
+  );
+}
+
+/** The soil in which the channels are counted; asked for only where there are several. */
+function CountedIn({
+  document,
+  countedIn,
+  disabled,
+  change,
+}: Pick<DeskFormProps, 'document' | 'disabled'> & {
+  countedIn: string | null;
+  change: (changes: Partial<EntityOf<'netCount'>>) => void;
+}) {
+  const soils = entitiesOf(document, 'soil');
+  if (soils.length === 0 && countedIn === null) return null;
+  const names = Object.fromEntries([
+    ['', text.sectionSoil],
+    ...soils.map(({ id, value }) => [id, value.name || soilText.unnamed]),
+  ]);
+  return (
+    <Choice
+      label={text.countedIn}
+      hint={text.countedInHint}
+      value={countedIn ?? ''}
+      names={names}
+      disabled={disabled}
+      onCommit={(id) => change({ countedIn: id === '' ? null : id })}
+    />
   );
 }

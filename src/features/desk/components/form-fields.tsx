@@ -11,6 +11,7 @@ interface FigureProps {
   optional?: boolean;
   positive?: boolean;
   atLeast?: { least: number; fault: string };
+  within?: { least: number; greatest: number; fault: string };
   most?: number;
   disabled: boolean;
   /** A question about a figure that is taken all the same. */

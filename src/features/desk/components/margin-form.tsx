@@ -11,6 +11,7 @@ import { LoadCasePane } from './load-case-pane.tsx';
 import { PermeabilityForm } from './permeability-form.tsx';
 import { PointForm } from './point-form.tsx';
 import { SetOutForm } from './set-out-form.tsx';
+import { SoilForm } from './soil-form.tsx';
 import { WaterForm } from './water-form.tsx';
 
 /** What is open in the margin in the place of the notes. */
@@ -18,7 +19,8 @@ export type MarginForm =
   | { form: 'loadCase' | 'water' | 'permeability' | 'count' | 'point' | 'findings' }
   /** `placedId`: the known point just placed, whose offset is typed next. */
   | { form: 'setOut'; placedId?: string }
-  | { form: 'line'; lineId: string };
+  | { form: 'line'; lineId: string }
+  | { form: 'soil'; soilId: string };
 
 interface MarginFormProps {
   open: MarginForm;
@@ -68,7 +70,26 @@ export function MarginFormPane({ open, store, detail, flush, onOpen, onClose, on
         />
       );
     case 'permeability':
-      return <PermeabilityForm {...form} />;
+      return (
+        <PermeabilityForm
+          {...form}
+          newId={store.newId}
+          onOpenSoil={(soilId) => onOpen({ form: 'soil', soilId })}
+        />
+      );
+    case 'soil':
+      return (
+        <SoilForm
+          {...form}
+          key={open.soilId}
+          soilId={open.soilId}
+          onClose={() => onOpen({ form: 'permeability' })}
+          onPlace={() => {
+            store.select({ kind: 'soil', ids: [open.soilId] });
+            take('soilPlace');
+          }}
+        />
+      );
     case 'count':
       return <CountForm {...form} />;
     case 'point':

@@ -1,57 +1,28 @@
-import { formText, permeabilityText as text } from '#client/text/desk-forms.ts';
-import { type EntityOf, singleOf } from '#shared/contract/document.ts';
-import { MAX_PERMEABILITY } from '#shared/contract/limits.ts';
+import { permeabilityText as text } from '#client/text/desk-forms.ts';
+import { singleOf } from '#shared/contract/document.ts';
 import type { DeskFormProps } from './desk-form.ts';
-import { Choice, Figure, Words } from './form-fields.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
+import { SoilFields, type SoilProperties } from './soil-fields.tsx';
+import { SoilList } from './soil-list.tsx';
 
-/** Permeability with its unit, the factor within which it is known, and where it comes from. */
-export function PermeabilityForm({ document, reading, disabled, run, onClose }: DeskFormProps) {
+interface PermeabilityFormProps extends DeskFormProps {
+  newId: () => string;
+  onOpenSoil: (soilId: string) => void;
+}
+
+/** Permeability and weights of the section's soil, and the soils that lie in regions of their own. */
+export function PermeabilityForm({ newId, onOpenSoil, ...form }: PermeabilityFormProps) {
+  const { document, reading, disabled, run } = form;
   const held = singleOf(document, 'permeability');
   if (!held) return null;
-  const { k, unit, factor, source } = held.value;
-  const change = (changes: Partial<EntityOf<'permeability'>>) =>
+  const change = (changes: Partial<SoilProperties>) =>
     run(text.label, [{ op: 'put', entityId: held.id, value: { ...held.value, ...changes } }]);
   return (
-    <FormPane title={text.title} onClose={onClose}>
+    <FormPane title={text.title} onClose={form.onClose}>
       <p className="m-0 text-ink-2">{text.lead}</p>
       <FormFindings findings={findingsFor(reading?.findings, 'permeability', 'seepage')} />
-      <div className="grid grid-cols-[3fr_2fr] items-start gap-2">
-        <Figure
-          label={text.k}
-          hint={text.kHint}
-          value={k}
-          optional
-          positive
-          most={MAX_PERMEABILITY}
-          disabled={disabled}
-          onCommit={(next) => change({ k: next })}
-        />
-        <Choice
-          label={text.unit}
-          value={unit}
-          names={text.units}
-          disabled={disabled}
-          onCommit={(next) => change({ unit: next })}
-        />
-      </div>
-      <Figure
-        label={text.factor}
-        hint={text.factorHint}
-        value={factor}
-        optional
-        atLeast={{ least: 1, fault: text.factorTooSmall }}
-        disabled={disabled}
-        onCommit={(next) => change({ factor: next })}
-      />
-      <Words
-        label={formText.source}
-        hint={formText.sourceHint}
-        value={source}
-        maxLength={500}
-        disabled={disabled}
-        onCommit={(next) => change({ source: next })}
-      />
+      <SoilFields soil={held.value} unitSystem={document.unitSystem} disabled={disabled} change={change} />
+      <SoilList document={document} disabled={disabled} run={run} newId={newId} onOpenSoil={onOpenSoil} />
     </FormPane>
   );
 }

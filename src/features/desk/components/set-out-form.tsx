@@ -57,6 +57,14 @@ export function SetOutForm({
         disabled={disabled}
         onCommit={(statedScale) => change({ statedScale })}
       />
+      <Choice
+        label={text.scales}
+        hint={text.scalesHint[held.value.scales]}
+        value={held.value.scales}
+        names={text.scalesNames}
+        disabled={disabled}
+        onCommit={(scales) => change({ scales })}
+      />
       {reading?.setOut.state === 'fitted' ? (
         <Fit
           setOut={reading.setOut}

@@ -12,6 +12,8 @@ interface TypedNumber {
   positive?: boolean;
   /** Least value that can be taken, with the sentence that says so. */
   atLeast?: { least: number; fault: string };
+  /** Least and greatest value that can be taken, with the sentence that says so. */
+  within?: { least: number; greatest: number; fault: string };
   /** Greatest size of a value that can be taken. */
   most?: number;
   /** How the value is shown while nobody types; the figure as entered by default. */
@@ -31,6 +33,7 @@ export function useTypedNumber({
   optional = false,
   positive = false,
   atLeast,
+  within,
   most = MAX_FIGURE,
   shown,
 }: TypedNumber) {
@@ -53,6 +56,7 @@ export function useTypedNumber({
     const parsed = parseTypedNumber(entered);
     if (parsed === null) return { parsed, fault: text.notANumber };
     if (Math.abs(parsed) > most) return { parsed, fault: text.tooLarge };
+    if (within && (parsed < within.least || parsed > within.greatest)) return { parsed, fault: within.fault };
     if (positive && parsed <= 0) return { parsed, fault: text.mustBePositive };
     return { parsed, fault: atLeast && parsed < atLeast.least ? atLeast.fault : null };
   }

@@ -9,6 +9,7 @@ import { Figure, NeededFigure, Words } from './form-fields.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
 import { HeadBoundaries } from './head-boundaries.tsx';
 import { headwaterQuestion } from './headwater-question.ts';
+import { LevelDoubtFields } from './level-doubt-fields.tsx';
 
 type WaterLevels = EntityOf<'waterLevels'>;
 
@@ -66,6 +67,12 @@ export function WaterForm({ fullSupplyLevel, onTrace, onOpenLine, ...form }: Wat
         positive
         disabled={disabled}
         onCommit={(next) => change({ gammaW: next })}
+      />
+      <LevelDoubtFields
+        levels={held.value}
+        unitSystem={document.unitSystem}
+        disabled={disabled}
+        change={change}
       />
       <Words
         label={formText.source}

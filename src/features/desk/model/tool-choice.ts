@@ -9,6 +9,7 @@ export type ToolId =
   | 'phreaticLine'
   | 'boundary'
   | 'readingPoint'
+  | 'soilPlace'
   | 'note';
 
 /** What the boundary tool draws: a kind of line, and for a submerged face whose level it carries. */

@@ -1,3 +1,4 @@
+import { soilText } from '#client/text/desk-forms.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { DocumentEntity, FlowNetDocument, SheetPoint, TracedLine } from '#shared/contract/document.ts';
@@ -136,6 +137,13 @@ function pointItem({ id, value }: Shown, input: SceneInput): SceneMark[] {
   const strong = isChosen(id, input);
   if (value.kind === 'knownPoint') {
     return [mark(id, 'knownPoint', value.at, COLOURS.ink, { text: value.name, strong })];
+  }
+  if (value.kind === 'soil') {
+    const text = value.name || soilText.unnamed;
+    return value.places.flatMap((at, i) => [
+      mark(`soil ${id} ${i}`, 'cross', at, COLOURS.boundary, { strong }),
+      mark(`soilName ${id} ${i}`, 'label', at, COLOURS.boundary, { text, strong }),
+    ]);
   }
   if (value.kind !== 'readingPoint') return [];
   const { place } = value;

@@ -6,6 +6,7 @@ import { growingEnd } from './line-points.ts';
 import { knownPointStep, noteStep, readingPointStep } from './place-tool.ts';
 import { selectStep } from './select-tool.ts';
 import { snapAt } from './snap.ts';
+import { soilPlaceStep } from './soil-tool.ts';
 import type { Modifiers, ToolContext, ToolEvent, ToolState, ToolStep } from './tool-types.ts';
 import { draftLine, nextPlace, traceStep } from './trace-tool.ts';
 
@@ -19,6 +20,7 @@ const MACHINES: Record<ToolId, Machine> = {
   phreaticLine: traceStep,
   boundary: traceStep,
   readingPoint: readingPointStep,
+  soilPlace: soilPlaceStep,
   note: noteStep,
 };
 
