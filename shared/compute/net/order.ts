@@ -51,7 +51,8 @@ export function orderAlongFlow(
   const reached = new Set(paths.flatMap(({ lines }) => lines));
   const sequence = [...reached];
   const equipotentials = heads.filter((line) => line.role === 'equipotential').map((line) => line.id);
-  const met = new Set([...paths.map(({ outlet }) => outlet), ...passed.map(({ boundary }) => boundary)]);
+  const ends = paths.flatMap(({ source, outlet }) => [source, outlet]);
+  const met = new Set([...ends, ...passed.map(({ boundary }) => boundary)]);
   return {
     place: placesOf(walk, heads, met),
     pairs: pairsOf(walk, paths, links, heads),

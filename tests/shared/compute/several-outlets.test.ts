@@ -1,0 +1,319 @@
+import { describe, expect, it } from 'vitest';
+import { readNet } from '#shared/compute/read-net.ts';
+import { netReading } from '#shared/contract/reading.ts';
+import { apronDrainDocument, apronDrainNet } from '#tests/support/exact-nets/apron-drain-net.ts';
+import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
+import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
+import { type SketchedLine, sketchedNet } from '#tests/support/exact-nets/sketched-net.ts';
+
+/** What a net sketched by straight pieces gives cause to look at. */
+const AS_DRAWN = ['cellsNotSquare', 'cellRatioDiffers'];
+
+const codesOf = (reading: ReturnType<typeof readNet>) =>
+  reading.findings
+    .filter((found) => !AS_DRAWN.includes(found.code))
+    .filter((found) => found.weight !== 'note')
+    .map((found) => found.code);
+
+describe.each([
+  ['between two drops', 100.2],
+  ['at a whole drop, where an equipotential ends on the bed', 100],
+])('a drain below a tailwater %s', (_, tailwater) => {
+  const net = apronDrainNet({ tailwater, drainHead: 98.25 });
+  const places = net.places(40, seededRandom(4));
+  const document = apronDrainDocument(net, { readings: places.map((at) => ({ at, clicked: true })) });
+  const reading = readNet(document);
+
+  it('is read, and its answer keeps to the schema', () => {
+    expect(codesOf(reading)).toEqual([]);
+    expect(reading.state).toBe('read');
+    expect(netReading.safeParse(reading).error?.issues ?? []).toEqual([]);
+  });
+
+  it('has no single count of drops, but one to each outlet at one head per drop', () => {
+    const { drops, shapeFactor, headPerDrop, outlets } = reading.quantities;
+    expect([drops, shapeFactor]).toEqual([null, null]);
+    expect(headPerDrop).toBeCloseTo(0.5, 9);
+    expect(outlets.map(({ label }) => label)).toEqual(['the drain', 'the tailwater boundary']);
+    expect(outlets[0]!.drops).toBeCloseTo((106 - 98.25) / 0.5, 9);
+    expect(outlets[1]!.drops).toBeCloseTo((106 - tailwater) / 0.5, 9);
+    expect(outlets[1]!.headLost).toBeCloseTo(106 - tailwater, 9);
+  });
+
+  it('has the heads of the closed form on every equipotential', () => {
+    const heads = reading.lines.filter(({ source }) => source === 'counted').map(({ head }) => head!);
+    expect(heads).toHaveLength(15);
+    heads.forEach((head, i) => {
+      expect(head).toBeCloseTo(106 - 0.5 * (i + 1), 9);
+    });
+  });
+
+  it('parts the channels of the headwater between them', () => {
+    const { channels, outlets } = reading.quantities;
+    // The closed form gives the drain ten channels; the outermost one that the tailwater takes is a part channel.
+    expect(net.flows.drain).toBe(10);
+    expect(channels).toBe(Math.ceil(net.flows.headwater));
+    expect(outlets.map((outlet) => outlet.channels)).toEqual([10, 1]);
+    const stated = changed(document, 'netCount', (value) => ({ ...value, channels: net.flows.headwater }));
+    const withPart = readNet(stated).quantities;
+    expect(withPart.outlets[1]!.channels).toBeCloseTo(net.flows.tailwater, 9);
+    // q = k·Δh·Nf with k = 2.5e-6 m/s.
+    expect(withPart.outlets[0]!.seepage).toBeCloseTo(2.5e-6 * 0.5 * 10, 15);
+    expect(withPart.seepage).toBeCloseTo(2.5e-6 * 0.5 * net.flows.headwater, 15);
+  });
+
+  it('is read by the field within 0.04 drop of the closed form, beside the bed that gives and takes too', () => {
+    reading.points.forEach((point, i) => {
+      const error = Math.abs(point.totalHead! - net.headAt(...places[i]!)) / 0.5;
+      expect(error, `${places[i]}: ${point.explanation}`).toBeLessThan(0.04);
+    });
+  });
+
+  it('is read alike when the tailwater is a water of its own', () => {
+    const own = withLines(document, 'submergedFace', (value) =>
+      value.water === 'tailwater' ? { ...value, water: null, head: tailwater } : value,
+    );
+    const same = readNet(changed(own, 'waterLevels', (value) => ({ ...value, tailwater: null })));
+    expect(codesOf(same)).toEqual([]);
+    expect(same.points.map(({ totalHead }) => totalHead)).toEqual(
+      reading.points.map(({ totalHead }) => totalHead),
+    );
+  });
+});
+
+describe('levels that the order denies', () => {
+  const net = apronDrainNet({ tailwater: 100.2, drainHead: 98.25 });
+  const document = apronDrainDocument(net, { readings: [{ at: [0, 90], clicked: true }] });
+
+  it('withhold every figure where the flow passes a boundary at another head', () => {
+    const moved = changed(document, 'waterLevels', (value) => ({ ...value, tailwater: 101.6 }));
+    const reading = readNet(moved);
+    expect(reading.findings.find((found) => found.weight === 'wrong')).toMatchObject({
+      code: 'outletOutOfOrder',
+      text: expect.stringContaining('between line 11 and line 12'),
+    });
+    expect(reading.points[0]!.totalHead).toBeNull();
+    expect(reading.quantities.outlets).toEqual([]);
+  });
+
+  it('ask for the lines that lead to a drain when they are left out', () => {
+    const without = withLines(document, 'equipotential', (value, i) => (i > 10 ? null : value));
+    expect(codesOf(readNet(without))).toContain('countDisagrees');
+  });
+});
+
+const ground: SketchedLine[] = [
+  {
+    line: 'impervious',
+    through: [
+      [0, 0],
+      [12, 0],
+    ],
+  },
+];
+const upright = (x: number, more: Partial<SketchedLine> = {}): SketchedLine => ({
+  line: 'equipotential',
+  through: [
+    [x, 0],
+    [x, 4],
+  ],
+  ...more,
+});
+
+describe('water that parts to two sides', () => {
+  // A canal on a shallow layer: one line round it, then lines of their own to a drain on either side.
+  const canal = (extra: readonly SketchedLine[] = []): SketchedLine[] => [
+    ...ground,
+    {
+      line: 'impervious',
+      through: [
+        [0, 4],
+        [5.5, 4],
+      ],
+    },
+    {
+      line: 'impervious',
+      through: [
+        [6.5, 4],
+        [12, 4],
+      ],
+    },
+    {
+      line: 'submergedFace',
+      water: 'headwater',
+      through: [
+        [5.5, 4],
+        [6.5, 4],
+      ],
+    },
+    {
+      line: 'drain',
+      name: 'West',
+      head: 6.5,
+      through: [
+        [0, 0],
+        [0, 4],
+      ],
+    },
+    {
+      line: 'drain',
+      name: 'East',
+      head: 5.8,
+      through: [
+        [12, 0],
+        [12, 4],
+      ],
+    },
+    {
+      line: 'equipotential',
+      through: [
+        [4.5, 4],
+        [4.7, 2.8],
+        [6, 2.2],
+        [7.3, 2.8],
+        [7.5, 4],
+      ],
+    },
+    upright(3.2),
+    upright(1.2),
+    upright(8.2),
+    upright(9.6),
+    upright(11),
+    ...extra,
+  ];
+  const read = (lines: readonly SketchedLine[], drops = 4.2) =>
+    readNet(
+      sketchedNet(lines, { headwater: 10, tailwater: null, drops }, [
+        [6, 1],
+        [2, 2],
+        [10.3, 2],
+      ]),
+    );
+
+  it('is counted along each side by the head per drop of the whole net', () => {
+    const reading = read(canal());
+    expect(codesOf(reading)).toEqual([]);
+    const { outlets, headPerDrop } = reading.quantities;
+    expect(headPerDrop).toBeCloseTo(1, 9);
+    expect(outlets.map(({ label, drops }) => [label, drops])).toEqual([
+      ['East', 4.2],
+      ['West', 3.5],
+    ]);
+    const drops = reading.lines.filter(({ source }) => source === 'counted').map((line) => line.drops);
+    expect(drops).toEqual([1, 2, 3, 2, 3, 4]);
+  });
+
+  it('is read below the fork, where three lines bound the ground, and on both sides', () => {
+    const [below, west, east] = read(canal()).points.map((point) => point.dropsLost!);
+    expect(below).toBeGreaterThan(1);
+    expect(below).toBeLessThan(2);
+    expect(west).toBeGreaterThan(2);
+    expect(west).toBeLessThan(3);
+    expect(east).toBeGreaterThan(3);
+    expect(east).toBeLessThan(4);
+  });
+
+  it('withholds the figures when a line is missing on one side', () => {
+    const reading = read(canal().filter(({ through }) => through[0]![0] !== 1.2));
+    expect(reading.findings.find((found) => found.code === 'countDisagrees')?.text).toContain('West');
+    expect(reading.points.every(({ totalHead }) => totalHead === null)).toBe(true);
+  });
+
+  it('honours a head typed on a side, and reports one that contradicts its place', () => {
+    const typed = (head: number) =>
+      canal().map((line) => (line.through[0]![0] === 3.2 ? { ...line, head } : line));
+    expect(codesOf(read(typed(8)))).toEqual([]);
+    expect(codesOf(read(typed(5.5)))).toContain('typedOutOfOrder');
+  });
+});
+
+describe('a lower water that feeds a drain from its own side', () => {
+  // A drain in the roof of a shallow layer draws water from two reservoirs; the lower one begins within a drop.
+  const lines: SketchedLine[] = [
+    ...ground,
+    {
+      line: 'impervious',
+      through: [
+        [0, 4],
+        [5.5, 4],
+      ],
+    },
+    {
+      line: 'impervious',
+      through: [
+        [6.5, 4],
+        [12, 4],
+      ],
+    },
+    {
+      line: 'submergedFace',
+      water: 'headwater',
+      through: [
+        [0, 0],
+        [0, 4],
+      ],
+    },
+    {
+      line: 'submergedFace',
+      name: 'Lower pool',
+      head: 8.5,
+      through: [
+        [12, 0],
+        [12, 4],
+      ],
+    },
+    {
+      line: 'drain',
+      head: 5.4,
+      through: [
+        [5.5, 4],
+        [6.5, 4],
+      ],
+    },
+    {
+      line: 'equipotential',
+      through: [
+        [4.5, 4],
+        [4.7, 2.8],
+        [6, 2.2],
+        [7.3, 2.8],
+        [7.5, 4],
+      ],
+    },
+    upright(1),
+    upright(2.2),
+    upright(3.6),
+    upright(9.5),
+    upright(8.4),
+  ];
+  const reading = readNet(
+    sketchedNet(lines, { headwater: 10, tailwater: null, drops: 4.6 }, [
+      [10.7, 2],
+      [9, 2],
+    ]),
+  );
+
+  it('is counted back from the fork', () => {
+    expect(codesOf(reading)).toEqual([]);
+    const counted = reading.lines.filter(({ source }) => source === 'counted').map((line) => line.drops);
+    expect(counted).toEqual([4, 1, 2, 3, 2, 3]);
+    expect(reading.quantities.outlets.map(({ label, drops }) => [label, drops])).toEqual([
+      ['the drain', 4.6],
+      ['Lower pool', 1.5],
+    ]);
+  });
+
+  it('is read between its level and that of the fork', () => {
+    const [first, second] = reading.points.map((point) => point.totalHead!);
+    expect(first).toBeLessThan(8.5);
+    expect(first).toBeGreaterThan(8);
+    expect(second).toBeLessThan(8);
+    expect(second).toBeGreaterThan(7);
+  });
+
+  it('is asked for its line when one is missing', () => {
+    const fewer = lines.filter(({ through }) => through[0]![0] !== 9.5);
+    const missing = readNet(sketchedNet(fewer, { headwater: 10, tailwater: null, drops: 4.6 }));
+    expect(missing.findings.find((found) => found.code === 'countDisagrees')?.text).toContain('Lower pool');
+  });
+});
