@@ -1,10 +1,8 @@
-import { readFile, stat } from 'node:fs/promises';
 import {
   decodePDFRawStream,
   PDFArray,
   PDFBool,
   PDFDict,
-  PDFDocument,
   PDFName,
   PDFNumber,
   type PDFPage,
@@ -12,9 +10,8 @@ import {
 } from 'pdf-lib';
 import { MAX_PIXELS } from '#shared/contract/limits.ts';
 import { lonePicture, type PlacedPicture } from './pdf-content.ts';
+import { nameIn, numberIn, openStructure } from './pdf-structure.ts';
 
-/** A file is read whole for this, twice over. */
-const MAX_FILE_BYTES = 64 * 1024 * 1024;
 const MAX_CONTENT_BYTES = 4 * 1024 * 1024;
 /** Finer than this is a picture in a picture, not a scan of paper. */
 const MAX_SCAN_DPI = 1200;
@@ -44,7 +41,7 @@ export interface PageScan {
  */
 export async function findPageScan(file: string, pageNumber: number): Promise<PageScan | null> {
   try {
-    const document = await openOnce(file);
+    const document = await openStructure(file);
     if (!document) return null;
     if (document.isEncrypted) return null;
     const page = document.getPage(pageNumber - 1);
@@ -62,7 +59,7 @@ export async function findFaxPictures(
   pageNumber: number,
 ): Promise<Array<Pick<PageScan, 'data' | 'widthPx' | 'heightPx' | 'inverted' | 'parameter'>>> {
   try {
-    const document = await openOnce(file);
+    const document = await openStructure(file);
     if (!document || document.isEncrypted) return [];
     const pictures = document
       .getPage(pageNumber - 1)
@@ -79,23 +76,6 @@ export async function findFaxPictures(
   } catch {
     return [];
   }
-}
-
-let lastOpened: { key: string; document: PDFDocument } | null = null;
-
-/** The pages of a file are asked for one after the other; reading it again for each would take longer than drawing. */
-async function openOnce(file: string): Promise<PDFDocument | null> {
-  const { size, mtimeMs } = await stat(file);
-  const key = `${file} ${size} ${mtimeMs}`;
-  if (lastOpened?.key === key) return lastOpened.document;
-  lastOpened = null;
-  if (size > MAX_FILE_BYTES) return null;
-  const document = await PDFDocument.load(await readFile(file), {
-    ignoreEncryption: true,
-    updateMetadata: false,
-  });
-  lastOpened = { key, document };
-  return document;
 }
 
 /** Links show nothing; every other annotation may. */
@@ -215,15 +195,4 @@ function isInverted(dict: PDFDict, samples: number): boolean | null {
 function quarterTurns(page: PDFPage): PageScan['turns'] | null {
   const turns = (((page.getRotation().angle / 90) % 4) + 4) % 4;
   return turns === 0 || turns === 1 || turns === 2 || turns === 3 ? turns : null;
-}
-
-function numberIn(dict: PDFDict, key: string, otherwise: number): number {
-  const value = dict.lookup(PDFName.of(key));
-  if (value instanceof PDFBool) return value.asBoolean() ? 1 : 0;
-  return value instanceof PDFNumber ? value.asNumber() : otherwise;
-}
-
-function nameIn(dict: PDFDict, key: string): string | undefined {
-  const value = dict.lookup(PDFName.of(key));
-  return value instanceof PDFName ? value.decodeText() : undefined;
 }

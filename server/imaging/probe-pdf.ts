@@ -2,6 +2,7 @@ import type { PDFDocumentProxy } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import { MAX_PAGES } from '#shared/contract/limits.ts';
 import { openPage, withPdf } from './pdf-document.ts';
 import { hasPdfEnd } from './pdf-end.ts';
+import { refuseUnsoundPdf } from './pdf-soundness.ts';
 import { RenderRefusal, refusals } from './refusal.ts';
 import type { ProbedPage } from './render-types.ts';
 
@@ -11,6 +12,7 @@ export async function probePdf(file: string): Promise<ProbedPage[]> {
   return withPdf(file, async (document) => {
     if (document.numPages < 1) throw refusals.noPages();
     if (document.numPages > MAX_PAGES) throw refusals.tooManyPages(document.numPages, MAX_PAGES);
+    await refuseUnsoundPdf(file, document.numPages);
     const pages: ProbedPage[] = [];
     for (let pageNumber = 1; pageNumber <= document.numPages; pageNumber++) {
       pages.push(await probePage(document, pageNumber));

@@ -58,6 +58,18 @@ export const refusals = {
       'encrypted',
       'The PDF needs a password to open. Save a copy without one and upload that.',
     ),
+  unclearEncryption: () =>
+    new RenderRefusal(
+      'encrypted',
+      'The PDF is encrypted in a way that no standard describes, so that programs show it differently. Save a copy ' +
+        'without encryption and upload that.',
+    ),
+  unclearPages: (stated: number, found: number) =>
+    new RenderRefusal(
+      'damaged',
+      `The PDF is damaged: its list of pages states ${wholeNumber.format(stated)} pages, but ` +
+        `${wholeNumber.format(found)} can be found. Copy it again from its source, or print it to a new PDF.`,
+    ),
   noPages: () =>
     new RenderRefusal('no-pages', 'The file holds no page that can be shown. Check it and export it again.'),
   tooManyPages: (count: number, limit: number) =>

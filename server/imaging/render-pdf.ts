@@ -1,15 +1,14 @@
 import { rm } from 'node:fs/promises';
-import { type Canvas, createCanvas } from '@napi-rs/canvas';
 import type { PageViewport, PDFPageProxy } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import sharp from 'sharp';
 import { DEFAULT_DPI } from '#shared/contract/limits.ts';
 import { BandRaster } from './band-raster.ts';
+import { drawBand, refusePictureFaults } from './draw-band.ts';
 import { flatShare, LINE_WORK_SHARE } from './flatness.ts';
 import { openPage, withPdf } from './pdf-document.ts';
 import { type ChosenDpi, chooseDpi, mainScanDpi } from './pdf-dpi.ts';
 import { largestPicturePixels } from './pdf-picture-sizes.ts';
-import { RenderRefusal, refusals } from './refusal.ts';
-import { isTooLargePicture, pictureWarning, takeWarnings } from './render-log.ts';
+import { takeWarnings } from './render-log.ts';
 import { renderScan } from './render-scan.ts';
 import type { RenderedSheet, RenderRequest } from './render-types.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
@@ -37,9 +36,18 @@ export async function renderPdf(
   onProgress: (share: number) => void,
 ): Promise<RenderedSheet> {
   const hasPictures = (await largestPicturePixels(request.file)) > 0;
-  const asItIs = hasPictures && (await renderAsScan(request, onProgress));
+  if (!hasPictures) return renderDrawn(request, onProgress);
+  const { withoutEmptyPictures } = await import('./without-empty-pictures.ts');
+  return withoutEmptyPictures(request, (changed) => renderWithPictures(changed, onProgress));
+}
+
+async function renderWithPictures(
+  request: RenderRequest,
+  onProgress: (share: number) => void,
+): Promise<RenderedSheet> {
+  const asItIs = await renderAsScan(request, onProgress);
   if (asItIs) return asItIs;
-  if (hasPictures) await refuseFaults(request);
+  await refuseFaults(request);
   return renderDrawn(request, onProgress);
 }
 
@@ -139,49 +147,6 @@ async function drawBands(
     await output.close();
   }
   return { isGrey, isLineWork: flatRows / heightPx >= LINE_WORK_SHARE };
-}
-
-async function drawBand(
-  page: PDFPageProxy,
-  viewport: PageViewport,
-  width: number,
-  rows: number,
-): Promise<Canvas> {
-  const canvas = createCanvas(width, rows);
-  const context = canvas.getContext('2d');
-  try {
-    // pdf.js is typed for the browser; this canvas has the part of the interface it draws with.
-    const canvasContext = context as unknown as CanvasRenderingContext2D;
-    const task = page.render({ canvas: null, canvasContext, viewport });
-    task.onContinue = collectFirst();
-    await task.promise;
-  } catch (error) {
-    throw error instanceof RenderRefusal ? error : refusals.damagedPdf(error);
-  }
-  refusePictureFaults();
-  return canvas;
-}
-
-/**
- * Buffers of a decoded scan lie outside the heap, where their size hurries no collection; what its decoding left
- * behind is collected before the scan is painted, or an A1 sheet would need half as much memory again.
- */
-function collectFirst(): (proceed: () => void) => void {
-  let collectedAt = 0;
-  return (proceed) => {
-    if (Date.now() - collectedAt > 500 && process.memoryUsage.rss() > 400e6) {
-      globalThis.gc?.();
-      collectedAt = Date.now();
-    }
-    proceed();
-  };
-}
-
-/** A page without one of its pictures would look like a sheet with nothing drawn on it. */
-function refusePictureFaults(): void {
-  const fault = pictureWarning(takeWarnings());
-  if (!fault) return;
-  throw isTooLargePicture(fault) ? refusals.pictureTooLarge() : refusals.damagedPage(fault);
 }
 
 /** The band is opaque (drawn on white), so premultiplied and plain colours are the same. */

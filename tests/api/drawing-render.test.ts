@@ -147,6 +147,18 @@ describe('the job that makes sheets', () => {
     expect(sheets).toHaveLength(1);
   });
 
+  it('says on its sheet that a picture without data is left blank', async () => {
+    const size = { width: 144, height: 72 };
+    const { drawingId, jobId } = await uploaded(pdfDrawing([{ ...size, emptyPicture: true }, size]));
+    await render(jobId, never);
+    const { job, sheets } = await drawing(drawingId);
+    expect(job).toMatchObject({ state: 'done', message: '' });
+    expect(sheets.map((sheet: { note: string }) => sheet.note)).toEqual([
+      expect.stringContaining('A picture on this page has no data in the file and is left blank.'),
+      '',
+    ]);
+  });
+
   it('is done once, however often it is asked for', async () => {
     const { drawingId, jobId } = await uploaded(await pngDrawing({ seed: 2 }));
     const { drawn, create } = watchedProcess();

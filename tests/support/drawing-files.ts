@@ -28,6 +28,8 @@ export interface PdfPage {
   rotate?: number;
   /** Shows a picture whose JPEG data are no JPEG. */
   brokenPicture?: boolean;
+  /** Shows a picture that has no data at all. */
+  emptyPicture?: boolean;
 }
 
 /** A PDF of vector line work with a page for each size. */
@@ -37,17 +39,24 @@ export function pdfDrawing(pages: PdfPage[]): Buffer {
   const objects = [
     '<< /Type /Catalog /Pages 2 0 R >>',
     `<< /Type /Pages /Kids [${kids}] /Count ${pages.length} >>`,
-    ...pages.flatMap(({ width, height, rotate = 0, brokenPicture = false }, index) => {
-      const content = `2 w 10 10 m ${width - 10} ${height - 10} l S 10 10 ${width - 20} ${height - 20} re S${brokenPicture ? ' /I Do' : ''}`;
+    ...pages.flatMap(({ width, height, rotate = 0, brokenPicture, emptyPicture }, index) => {
+      const content = `2 w 10 10 m ${width - 10} ${height - 10} l S 10 10 ${width - 20} ${height - 20} re S${brokenPicture ? ' /I Do' : ''}${emptyPicture ? ' /E Do' : ''}`;
       return [
-        `<< /Type /Page /Parent 2 0 R /MediaBox [0 0 ${width} ${height}] /Rotate ${rotate} /Contents ${4 + index * 2} 0 R /Resources << /XObject << /I ${picture} 0 R >> >> >>`,
+        `<< /Type /Page /Parent 2 0 R /MediaBox [0 0 ${width} ${height}] /Rotate ${rotate} /Contents ${4 + index * 2} 0 R /Resources << /XObject << /I ${picture} 0 R /E ${picture + 1} 0 R >> >> >>`,
         `<< /Length ${content.length} >>\nstream\n${content}\nendstream`,
       ];
     }),
-    '<< /Type /XObject /Subtype /Image /Width 400 /Height 300 /ColorSpace /DeviceRGB /BitsPerComponent 8 ' +
-      '/Filter /DCTDecode /Length 7 >>\nstream\nno JPEG\nendstream',
+    pictureOf('no JPEG'.repeat(100)),
+    ...(pages.some((page) => page.emptyPicture) ? [pictureOf('')] : []),
   ];
   return Buffer.from(assembled(objects), 'latin1');
+}
+
+function pictureOf(data: string): string {
+  return (
+    '<< /Type /XObject /Subtype /Image /Width 400 /Height 300 /ColorSpace /DeviceRGB /BitsPerComponent 8 ' +
+    `/Filter /DCTDecode /Length ${data.length} >>\nstream\n${data}\nendstream`
+  );
 }
 
 function assembled(objects: string[]): string {
