@@ -37,18 +37,19 @@ export function elementStiffness(mesh: QuadraticMesh, tensorOf: (n: number) => T
 /**
  * Solves ∇·(K∇v) = 0 with held values and no flow elsewhere, but for what `load` brings in at the nodes: null when the
  * matrix is not positive definite, that is when a part of the mesh has no held value. K by `elements`, from
- * `elementStiffness`.
+ * `elementStiffness`; `order` from `eliminationOrder`.
  */
 export function solveField(
   mesh: QuadraticMesh,
   elements: Float64Array,
   unknowns: Unknowns,
+  order: Int32Array,
   load: Float64Array | null = null,
 ): FieldSolution | null {
   const values = unknowns.base.slice();
   if (unknowns.count > 0) {
     const { matrix, right } = assemble(mesh, elements, unknowns, load);
-    const factor = choleskyOf(matrix, orderOf(mesh, unknowns, matrix));
+    const factor = choleskyOf(matrix, orderOfUnknowns(order, unknowns));
     if (factor === null) return null;
     const solved = factor.solve(right);
     unknowns.unknown.forEach((u, node) => {
@@ -58,15 +59,61 @@ export function solveField(
   return { values, inflow: productWith(mesh, elements, values) };
 }
 
-function orderOf(mesh: QuadraticMesh, { unknown, count }: Unknowns, matrix: SparseRows): Int32Array {
-  const x = new Float64Array(count);
-  const y = new Float64Array(count);
-  unknown.forEach((u, node) => {
-    if (u < 0) return;
-    x[u] = mesh.x[node]!;
-    y[u] = mesh.y[node]!;
-  });
-  return nestedDissection(matrix, x, y);
+/**
+ * An order of elimination for all nodes of a mesh, by nested dissection; it serves every system on the mesh, the nodes
+ * of which that are held being passed over.
+ */
+export function eliminationOrder(mesh: QuadraticMesh): Int32Array {
+  const count = mesh.x.length;
+  const { starts, columns } = neighboursOf(
+    mesh,
+    Int32Array.from({ length: count }, (_, i) => i),
+    count,
+  );
+  return nestedDissection({ n: count, starts, columns }, mesh.x, mesh.y);
+}
+
+/** The unknowns in the order in which their nodes come; one shared by several nodes takes the place of the last. */
+function orderOfUnknowns(order: Int32Array, { unknown, count }: Unknowns): Int32Array {
+  const result = new Int32Array(count);
+  const isPlaced = new Uint8Array(count);
+  let end = count;
+  for (let i = order.length - 1; i >= 0; i -= 1) {
+    const u = unknown[order[i]!]!;
+    if (u < 0 || isPlaced[u] === 1) continue;
+    isPlaced[u] = 1;
+    end -= 1;
+    result[end] = u;
+  }
+  return result;
+}
+
+/** The other unknowns that share an element with each unknown, by rows. */
+function neighboursOf(
+  { elements }: QuadraticMesh,
+  unknown: Int32Array,
+  count: number,
+): { starts: Int32Array; columns: Int32Array } {
+  const byRow = elementsByUnknown(elements, unknown, count);
+  const starts = new Int32Array(count + 1);
+  const columns = new Int32Array(5 * byRow.slots.length);
+  const seen = new Int32Array(count).fill(-1);
+  let end = 0;
+  for (let u = 0; u < count; u += 1) {
+    seen[u] = u;
+    for (let k = byRow.starts[u]!; k < byRow.starts[u + 1]!; k += 1) {
+      const first = byRow.slots[k]! - (byRow.slots[k]! % 6);
+      for (let j = first; j < first + 6; j += 1) {
+        const v = unknown[elements[j]!]!;
+        if (v < 0 || seen[v] === u) continue;
+        seen[v] = u;
+        columns[end] = v;
+        end += 1;
+      }
+    }
+    starts[u + 1] = end;
+  }
+  return { starts, columns: columns.slice(0, end) };
 }
 
 /** K·v at every node. */
@@ -97,37 +144,26 @@ export function assemble(
   unknown.forEach((u, node) => {
     if (u >= 0) right[u] = right[u]! - held[node]! + (load?.[node] ?? 0);
   });
-  const byRow = elementsByUnknown(numbers, unknown, count);
-  const starts = new Int32Array(count + 1);
-  const columns: number[] = [];
-  const values: number[] = [];
+  const { starts, columns } = neighboursOf(mesh, unknown, count);
+  const values = new Float64Array(columns.length);
   const diagonal = new Float64Array(count);
-  const place = new Int32Array(count).fill(-1);
+  const byRow = elementsByUnknown(numbers, unknown, count);
+  const place = new Int32Array(count);
   for (let u = 0; u < count; u += 1) {
-    const first = columns.length;
+    for (let e = starts[u]!; e < starts[u + 1]!; e += 1) place[columns[e]!] = e;
     for (let k = byRow.starts[u]!; k < byRow.starts[u + 1]!; k += 1) {
-      const [n, i] = [Math.floor(byRow.slots[k]! / 6), byRow.slots[k]! % 6];
+      const slot = byRow.slots[k]!;
+      const first = slot - (slot % 6);
       for (let j = 0; j < 6; j += 1) {
-        const v = unknown[numbers[6 * n + j]!]!;
+        const v = unknown[numbers[first + j]!]!;
         if (v < 0) continue;
-        const value = elements[36 * n + 6 * i + j]!;
+        const value = elements[6 * slot + j]!;
         if (v === u) diagonal[u] = diagonal[u]! + value;
-        else if (place[v]! >= first) values[place[v]!] = values[place[v]!]! + value;
-        else {
-          place[v] = columns.push(v) - 1;
-          values.push(value);
-        }
+        else values[place[v]!] = values[place[v]!]! + value;
       }
     }
-    starts[u + 1] = columns.length;
   }
-  const matrix = {
-    n: count,
-    starts,
-    columns: Int32Array.from(columns),
-    values: Float64Array.from(values),
-    diagonal,
-  };
+  const matrix = { n: count, starts, columns, values, diagonal };
   return { matrix, right };
 }
 

@@ -20,13 +20,23 @@ export type FreeSurface = {
 
 /** Permeability above the free surface, in parts of that below. */
 const DRY_PART = 1e-4;
-/** Part of the new pressure taken over in a round; the whole makes the exit swing to and fro. */
-const TAKEN = 0.6;
-const MOST_ROUNDS = 60;
-/** Change of pressure head in a round, in parts of the range of heads, at which the surface rests: on two meshes. */
+/**
+ * Part of the new pressure taken over in a round, on the first and the refined mesh: the whole makes the exit swing to
+ * and fro. Where a round brings no rest, less is taken from then on, down to the least: where the surface stands
+ * upright, at a level drain, a little pressure moves it far.
+ */
+const TAKEN = [0.6, 0.5] as const;
+const LEAST_TAKEN = [0.15, 0.2] as const;
+/**
+ * Rounds on the first and the refined mesh. Of the pressures of the last ones the mean is taken, as the exit may go on
+ * swinging by a side of the mesh.
+ */
+const MOST_ROUNDS = [40, 22] as const;
+const MEAN_OF = 8;
+/** Change of pressure head in a round, in parts of the range of heads, at which the surface rests. */
 const RESTS = [2e-3, 2e-4] as const;
 /** A surface that still moves by this part of the range after the last round has not been found. */
-const RESTLESS = 0.01;
+const RESTLESS = 0.02;
 /** Size of elements at the ends of the surface, in parts of those elsewhere. */
 const END_SIZE = 0.04;
 
@@ -43,9 +53,12 @@ export function freeSurface(outline: SectionOutline, elements: number): FreeSurf
   const options = { wanted: (region: number) => region !== OUTSIDE, mostVertices: 20_000 };
   refine(outline.mesh, { ...options, sizeAt: sizeField(corners, size) });
   const first = headProblemOf(outline);
-  const rough = settle(first, new Float64Array(first.mesh.x.length).fill(1), RESTS[0]);
+  const rough = settle(first, new Float64Array(first.mesh.x.length).fill(1), 0);
   if ('ok' in rough) return rough;
-  const ends = contourLines(first.mesh, rough.pressure, 0).flatMap((line) => [line[0]!, line.at(-1)!]);
+  const ends = contourLines(first.mesh, decidedPressure(first, rough.pressure), 0).flatMap((line) => [
+    line[0]!,
+    line.at(-1)!,
+  ]);
   const atEnds = ends.map(([x, y]) => ({
     x,
     y,
@@ -60,20 +73,23 @@ export function freeSurface(outline: SectionOutline, elements: number): FreeSurf
   const start = second.mesh.x.map(
     (x, node) => reader.valueAt(rough.pressure, [x, second.mesh.y[node]!]) ?? 0,
   );
-  const found = settle(second, start, RESTS[1]);
+  const found = settle(second, start, 1);
   return 'ok' in found ? found : surfaceOf(second, found, size);
 }
 
-type Settled = { readonly head: HeadField; readonly pressure: Float64Array };
+type Settled = { readonly pressure: Float64Array };
 
-/** Repeats rounds from a first pressure until it rests. */
-function settle(problem: HeadProblem, first: Float64Array, rest: number): Settled | SectionFailure {
+/** Repeats rounds from a first pressure until it rests; `stage` 0 on the first mesh, 1 on the refined one. */
+function settle(problem: HeadProblem, first: Float64Array, stage: 0 | 1): Settled | SectionFailure {
   const { mesh, elevations } = problem;
   const range = rangeOfHeads(problem);
   let pressure = first;
   let open: HeadField['open'] | undefined;
   let change = Number.POSITIVE_INFINITY;
-  for (let round = 0; round < MOST_ROUNDS; round += 1) {
+  const last: Float64Array[] = [];
+  let taken: number = TAKEN[stage];
+  let best = Number.POSITIVE_INFINITY;
+  for (let round = 0; round < MOST_ROUNDS[stage]; round += 1) {
     const head = headField(problem, cutElements(problem, pressure), open);
     if (head === null)
       return failure(
@@ -85,20 +101,30 @@ function settle(problem: HeadProblem, first: Float64Array, rest: number): Settle
     const next = new Float64Array(mesh.x.length);
     head.values.forEach((value, node) => {
       const now = value - elevations[node]!;
-      next[node] = pressure[node]! + TAKEN * (now - pressure[node]!);
+      const isHeld = !Number.isNaN(head.held[node]!);
+      next[node] = isHeld ? now : pressure[node]! + taken * (now - pressure[node]!);
       if (now > 0 || pressure[node]! > 0) change = Math.max(change, Math.abs(now - pressure[node]!));
     });
     pressure = next;
-    if (change < rest * range) return { head, pressure };
-    if (round === MOST_ROUNDS - 1 && change < RESTLESS * range) return { head, pressure };
+    if (change > 0.9 * best) taken = Math.max(LEAST_TAKEN[stage], 0.75 * taken);
+    best = Math.min(best, change);
+    if (change < RESTS[stage] * range) return { pressure };
+    if (round >= MOST_ROUNDS[stage] - MEAN_OF) last.push(pressure);
   }
+  if (change < RESTLESS * range)
+    return {
+      pressure: pressure.map((_, node) => last.reduce((sum, each) => sum + each[node]!, 0) / last.length),
+    };
   return failure(
     'no-rest',
     'No free surface was found that stays where it is. Check levels, drains and faces of outflow.',
   );
 }
 
-/** From the lowest place where water may come out, or the lowest head, to the highest head. */
+/**
+ * From the lowest place where water may come out, or the lowest head, to the highest head; a tenth of the section's
+ * height where that is more, as in a section with one level.
+ */
 function rangeOfHeads({ mesh, conditions, elevations }: HeadProblem): number {
   let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   for (const { label, nodes } of mesh.sides) {
@@ -109,7 +135,8 @@ function rangeOfHeads({ mesh, conditions, elevations }: HeadProblem): number {
     }
     if (condition?.kind === 'freeOutflow') for (const node of nodes) low = Math.min(low, elevations[node]!);
   }
-  return Math.max(high - low, Number.MIN_VALUE);
+  const [least, most] = [Math.min, Math.max].map((of) => elevations.reduce((a, b) => of(a, b)));
+  return Math.max(high - low, 0.1 * (most! - least!));
 }
 
 function cutElements({ mesh, tensorOf }: HeadProblem, pressure: Float64Array): Float64Array {
@@ -126,6 +153,7 @@ function cutElements({ mesh, tensorOf }: HeadProblem, pressure: Float64Array): F
 /** Lines of zero pressure, drawn to the ends of heads that they nearly meet, and a place in each supplied body of water. */
 function surfaceOf(problem: HeadProblem, { pressure }: Settled, size: number): FreeSurface | SectionFailure {
   const { mesh } = problem;
+  const decided = decidedPressure(problem, pressure);
   const wetPlaces = suppliedBodies(problem, pressure);
   if (wetPlaces.length === 0)
     return failure(
@@ -135,10 +163,35 @@ function surfaceOf(problem: HeadProblem, { pressure }: Settled, size: number): F
   const ends = waterlines(problem, size);
   const snapped = (place: Pair): Pair =>
     ends.find(([x, y]) => Math.hypot(x - place[0], y - place[1]) < 0.1 * size) ?? place;
-  const lines = contourLines(mesh, pressure, 0).map((line) =>
-    thinned([snapped(line[0]!), ...line.slice(1, -1), snapped(line.at(-1)!)], 1e-3 * size),
-  );
+  const lines = contourLines(mesh, decided, 0)
+    .filter((line) => lengthOf(line) > size)
+    .map((line) => thinned([snapped(line[0]!), ...line.slice(1, -1), snapped(line.at(-1)!)], 1e-3 * size));
   return { lines, wetPlaces };
+}
+
+/**
+ * The pressure, that on faces of outflow, where it is zero, being set to the side of the element behind: the surface
+ * does not run along a drain.
+ */
+function decidedPressure({ mesh, conditions }: HeadProblem, pressure: Float64Array): Float64Array {
+  const decided = pressure.slice();
+  const tiny = 1e-9 * pressure.reduce((most: number, each) => Math.max(most, Math.abs(each)), 0);
+  const wet = new Set<number>();
+  for (const { element, label, nodes } of mesh.sides) {
+    if (conditions[label]?.kind !== 'freeOutflow') continue;
+    let behind = 0;
+    for (let i = 0; i < 6; i += 1) behind += pressure[mesh.elements[6 * element + i]!]!;
+    for (const node of nodes) {
+      if (Math.abs(pressure[node]!) > tiny) continue;
+      if (behind > 0) wet.add(node);
+      decided[node] = wet.has(node) ? tiny : -tiny;
+    }
+  }
+  return decided;
+}
+
+function lengthOf(line: readonly Pair[]): number {
+  return line.slice(1).reduce((sum, [x, y], i) => sum + Math.hypot(x - line[i]![0], y - line[i]![1]), 0);
 }
 
 /** Places at which a held head equals the elevation: waterlines. */

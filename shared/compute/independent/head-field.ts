@@ -8,9 +8,13 @@ import {
 import type { BoundarySide, QuadraticMesh } from '#shared/compute/independent/quadratic-mesh.ts';
 import type { SectionCondition } from '#shared/compute/independent/section-problem.ts';
 
-/** A mesh with what is known of it: the condition of each label, permeability of each region, elevation of each node. */
+/**
+ * A mesh with what is known of it: an order of elimination for its nodes, the condition of each label, permeability of
+ * each element, elevation of each node.
+ */
 export type HeadProblem = {
   readonly mesh: QuadraticMesh;
+  readonly order: Int32Array;
   readonly conditions: readonly SectionCondition[];
   readonly tensorOf: (element: number) => Tensor;
   readonly elevations: Float64Array;
@@ -25,6 +29,7 @@ export type HeadField = FieldSolution & {
   readonly open: ReadonlySet<BoundarySide>;
 };
 
+/** Turns until the faces of outflow must have settled. */
 const MOST_ROUNDS = 40;
 
 /**
@@ -37,16 +42,17 @@ export function headField(
   problem: HeadProblem,
   elements: Float64Array = elementStiffness(problem.mesh, problem.tensorOf),
   opened?: ReadonlySet<BoundarySide>,
+  mostRounds = MOST_ROUNDS,
 ): HeadField | null {
   const { mesh, conditions } = problem;
   const free = mesh.sides.filter((side) => conditions[side.label]?.kind === 'freeOutflow');
   const open = new Set(opened ?? free);
   for (let round = 0; ; round += 1) {
     const held = heldHeads(problem, open);
-    const solution = solveField(mesh, elements, unknownsOf(held));
+    const solution = solveField(mesh, elements, unknownsOf(held), problem.order);
     if (solution === null) return null;
     const wrong = free.filter((side) => isWrong(problem, solution, side, open.has(side)));
-    if (wrong.length === 0 || round === MOST_ROUNDS) return { ...solution, held, open };
+    if (wrong.length === 0 || round >= mostRounds) return { ...solution, held, open };
     for (const side of wrong) if (!open.delete(side)) open.add(side);
   }
 }

@@ -1,3 +1,4 @@
+import { eliminationOrder } from '#shared/compute/independent/elliptic-system.ts';
 import type { HeadProblem } from '#shared/compute/independent/head-field.ts';
 import { quadraticMesh } from '#shared/compute/independent/quadratic-mesh.ts';
 import { toSection } from '#shared/compute/independent/section-frame.ts';
@@ -16,6 +17,7 @@ export function headProblemOf({ mesh: triangles, frame, conditions, tensors }: S
   const datum = frame.origin[1];
   return {
     mesh,
+    order: eliminationOrder(mesh),
     conditions: conditions.map((each) =>
       each.kind === 'head' ? { ...each, head: each.head - datum } : each,
     ),

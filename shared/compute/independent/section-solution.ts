@@ -41,6 +41,8 @@ export type SectionSolution = {
   readonly exits: readonly ExitGradient[];
   /** Free surface in section coordinates, upstream end first; null where the section is confined. */
   readonly phreatic: readonly (readonly Pair[])[] | null;
+  /** Greatest departure of the head from the elevation along the free surface, length; null where confined. */
+  readonly surfaceMisfit: number | null;
   /** √(kh·kv) of each soil, in the order of the problem. */
   readonly permeabilities: readonly number[];
   /** Permeability of each soil in the frame. */

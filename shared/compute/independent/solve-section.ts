@@ -24,6 +24,7 @@ import {
   fineCorners,
   sizeField,
 } from '#shared/compute/independent/size-field.ts';
+import { solutionReader } from '#shared/compute/independent/solution-reader.ts';
 import {
   type StreamField,
   streamFunction,
@@ -40,8 +41,9 @@ export type SolveOptions = {
   readonly mostNodes?: number;
 };
 
-const USUAL = { accuracy: 1e-3, elements: 1200, mostNodes: 30_000 } as const;
+const USUAL = { accuracy: 1e-3, elements: 1200, mostNodes: 20_000 } as const;
 const MOST_ROUNDS = 8;
+const NO_ENERGY = 1e-8;
 /** Part of the gap that is refined away in a round (Dörfler 1996). */
 const MARKED_PART = 0.6;
 
@@ -68,7 +70,7 @@ function solveUnconfined(
   options: Required<SolveOptions>,
 ): SectionSolution | SectionFailure {
   if (!outline.conditions.some(({ kind }) => kind === 'head')) return noHead();
-  const surface = freeSurface(outline, options.elements);
+  const surface = freeSurface(outline, Math.ceil(options.elements / 2));
   if ('ok' in surface) return surface;
   const toOwn = (place: Pair) => toSection(outline.frame, place);
   const lines = surface.lines.map((line) => upstreamFirst(line.map(toOwn)));
@@ -83,7 +85,17 @@ function solveUnconfined(
   const belowOutline = outlineOf(below);
   if ('ok' in belowOutline) return belowOutline;
   const solution = solveConfined(below, belowOutline, options);
-  return solution.ok ? { ...solution, phreatic: lines } : solution;
+  return solution.ok ? { ...solution, phreatic: lines, surfaceMisfit: misfitOf(solution, lines) } : solution;
+}
+
+function misfitOf(solution: SectionSolution, lines: ReadonlyArray<readonly Pair[]>): number {
+  const { headAt } = solutionReader(solution);
+  let greatest = 0;
+  for (const place of lines.flat()) {
+    const head = headAt(place);
+    if (head !== null) greatest = Math.max(greatest, Math.abs(head - place[1]));
+  }
+  return greatest;
 }
 
 /** Id of the free surface among the pieces of an outline. */
@@ -133,10 +145,17 @@ function solveConfined(
     const solved = solveOnce(outline);
     if ('ok' in solved) return solved;
     const { gap } = solved;
-    const isDone = gap === null || gap.gap <= options.accuracy * gap.energy || round === MOST_ROUNDS;
+    const isDone = gap === null || isFineEnough(solved, gap, options.accuracy) || round === MOST_ROUNDS;
     if (isDone || outline.mesh.x.length >= mostVertices) return solutionOf(problem, outline, corners, solved);
     marked = worstElements(gap.byElement).map((n) => solved.problem.mesh.triangles[n]!);
   }
+}
+
+/** The gap in parts of the energy, but where next to nothing flows in parts of what would with the section's height lost. */
+function isFineEnough({ problem }: Round, { energy, gap }: EnergyGap, accuracy: number): boolean {
+  const height = problem.elevations.reduce((most, each) => Math.max(most, Math.abs(each)), 0);
+  const { xx, yy } = problem.tensorOf(0);
+  return gap <= accuracy * Math.max(energy, NO_ENERGY * Math.sqrt(xx * yy) * height * height);
 }
 
 function solveOnce(outline: SectionOutline): Round | SectionFailure {
@@ -192,6 +211,7 @@ function solutionOf(
     gap: gap === null || gap.energy === 0 ? null : gap.gap / gap.energy,
     exits: exitGradients(headProblem, head, outline.frame, corners),
     phreatic: null,
+    surfaceMisfit: null,
     permeabilities: problem.soils.map(({ kh, kv }) => Math.sqrt(kh * kv)),
     tensors: outline.tensors,
     nodeCount: headProblem.mesh.x.length,

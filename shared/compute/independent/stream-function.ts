@@ -25,7 +25,7 @@ export function streamFunction(problem: HeadProblem, head: HeadField): StreamFie
   if (inner.some((loop) => Math.abs(netInflow(loop, head)) > NO_FLOW * whole)) return null;
   const unknowns = streamUnknowns(mesh, loops, head);
   const elements = elementStiffness(mesh, (n) => streamTensor(problem.tensorOf(n)));
-  const solution = solveField(mesh, elements, unknowns, tangentialLoad(mesh, head));
+  const solution = solveField(mesh, elements, unknowns, problem.order, tangentialLoad(mesh, head));
   return solution === null ? null : { mesh, values: solution.values };
 }
 

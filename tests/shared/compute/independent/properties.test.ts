@@ -83,7 +83,8 @@ describe('a section moved, turned, mirrored or scaled', () => {
 
 /** An upright strip of given soils one beside the other or one above the other, heads at its two ends. */
 function strip(soils: ReadonlyArray<{ k: number; thickness: number }>, beside: boolean): SectionProblem {
-  const ends = soils.reduce<number[]>((sums, { thickness }) => [...sums, sums.at(-1)! + thickness], [0]);
+  const ends = [0];
+  for (const { thickness } of soils) ends.push(ends.at(-1)! + thickness);
   const whole = ends.at(-1)!;
   const [width, height] = beside ? [whole, 4] : [9, whole];
   const line = (points: readonly Pair[], condition: SectionChain['condition']) => ({ points, condition });
