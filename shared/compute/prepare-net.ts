@@ -215,6 +215,7 @@ function groundOf(
     bodies: solidBodies(shapes('impervious'), shapes('equipotential'), model.reach),
     phreaticLines: shapes('phreaticLine'),
     faces: shapes('ground', 'submergedFace', 'outflowFace'),
+    tracingAccuracyPx: inputs.count.tracingAccuracyPx,
     gammaW: inputs.water.gammaW,
     levelUnit,
     placeDoubt: placeDoubtOf(

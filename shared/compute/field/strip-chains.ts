@@ -1,5 +1,5 @@
 import type { Chain, Sizes } from '#shared/compute/field/strip-sizes.ts';
-import { distanceToRing, type Ring, ringContains } from '#shared/compute/geometry/polygon.ts';
+import { distanceToRing, type Ring, ringContains, ringOf } from '#shared/compute/geometry/polygon.ts';
 import {
   boxesMeet,
   nearestOnPolyline,
@@ -13,21 +13,44 @@ import type { Strip } from '#shared/compute/net/strips.ts';
 /** A line may be held off its place by this part of the strip's width: that part of a drop is lost by it. */
 const HELD_OFF = 0.003;
 
-/** Everything the mesh of a strip has to keep: its two lines, its two ends, walls and soil boundaries inside. */
+/** What the mesh of a strip has to keep: its two lines, its two ends, and what stands inside. */
+export type StripChains = {
+  readonly before: Chain;
+  readonly after: Chain;
+  /** Each end from the line before to the line after. */
+  readonly ways: readonly Chain[][];
+  readonly inside: readonly Chain[];
+};
+
+/** The chains of a strip with as many vertices as its elements ask for. */
 export function chainsOf(
   strip: Strip,
-  inner: readonly Pair[][],
+  sizes: Sizes,
+  walls: readonly Pair[][],
   soilBoundaries: readonly Pair[][],
   freeFaces: readonly Polyline[],
   slack: number,
-): Chain[] {
-  return [
-    { points: verticesOf(strip.beforeShape), kind: 'before' },
-    { points: verticesOf(strip.afterShape), kind: 'after' },
-    ...strip.ways.flatMap(({ points, open }) => waysChains(points, open, freeFaces, slack)),
-    ...inner.map((points): Chain => ({ points, kind: 'closed' })),
-    ...soilBoundaries.map((points): Chain => ({ points, kind: 'soil' })),
-  ];
+): StripChains {
+  const chainOf = (kind: Chain['kind']) => (points: readonly Pair[]) => spaced({ points, kind }, sizes);
+  return {
+    before: chainOf('before')(verticesOf(strip.beforeShape)),
+    after: chainOf('after')(verticesOf(strip.afterShape)),
+    ways: strip.ways.map(({ points, open }) =>
+      waysChains(points, open, freeFaces, slack).map((chain) => spaced(chain, sizes)),
+    ),
+    inside: [...walls.map(chainOf('closed')), ...soilBoundaries.map(chainOf('soil'))],
+  };
+}
+
+/** The outline that the chains make, which is not quite that of the lines they were made of. */
+export function outlineOf({ before, after, ways }: StripChains): Ring | null {
+  const [start, end] = ways.map((chains) => chains.flatMap(({ points }) => points));
+  return ringOf([
+    ...before.points,
+    ...(end ?? []),
+    ...[...after.points].reverse(),
+    ...[...(start ?? [])].reverse(),
+  ]);
 }
 
 /** A way along the carriers, parted where it enters or leaves a face of free outflow. */
@@ -76,7 +99,7 @@ export function piecesInside(line: Polyline, ring: Ring, slack: number): Pair[][
  * A chain with as many vertices as the elements along it ask for: those are left out that are needed neither for its
  * shape, within a small part of the strip's width, nor for the size of the elements.
  */
-export function spaced({ points, kind }: Chain, { widthAt, sizeAt }: Sizes): Chain {
+function spaced({ points, kind }: Chain, { widthAt, sizeAt }: Sizes): Chain {
   const kept = withoutNeedless(points, widthAt);
   const sizes = kept.map((point) => sizeAt(...point));
   const result: Pair[] = [];

@@ -1,7 +1,7 @@
 import { nextOf, type Triangulation, triangulate } from '#shared/compute/field/constrained-triangulation.ts';
 import { gradedPoints } from '#shared/compute/field/graded-points.ts';
 import { type EdgeKind, type NodedEdges, nodeEdges } from '#shared/compute/field/node-edges.ts';
-import { chainsOf, piecesInside, spaced } from '#shared/compute/field/strip-chains.ts';
+import { chainsOf, outlineOf, piecesInside } from '#shared/compute/field/strip-chains.ts';
 import { sizesOf } from '#shared/compute/field/strip-sizes.ts';
 import { type Ring, ringContains } from '#shared/compute/geometry/polygon.ts';
 import type { Polyline } from '#shared/compute/geometry/polyline.ts';
@@ -42,11 +42,11 @@ export function meshStrip(strip: Strip, around: StripSurroundings): StripMesh | 
   const { walls, freeFaces, soilBoundaries, slack } = around;
   const inner = walls.flatMap((wall) => piecesInside(wall, strip.ring, slack));
   const soil = soilBoundaries.flatMap((line) => piecesInside(line, strip.ring, slack));
-  const sizes = sizesOf(strip, inner, slack);
-  const chains = chainsOf(strip, inner, soil, freeFaces, slack).map((chain) => spaced(chain, sizes));
-  const noded = nodeEdges(chains, MERGE_PX);
-  if (noded === null) return null;
-  const inside = gradedPoints(strip.ring, noded.xy, spacingsOf(noded));
+  const chains = chainsOf(strip, sizesOf(strip, inner, slack), inner, soil, freeFaces, slack);
+  const outline = outlineOf(chains);
+  const noded = nodeEdges([chains.before, chains.after, ...chains.ways.flat(), ...chains.inside], MERGE_PX);
+  if (outline === null || noded === null) return null;
+  const inside = gradedPoints(outline, noded.xy, spacingsOf(noded));
   const xy = new Float64Array(noded.xy.length + inside.length);
   xy.set(noded.xy);
   xy.set(inside, noded.xy.length);
@@ -54,7 +54,7 @@ export function meshStrip(strip: Strip, around: StripSurroundings): StripMesh | 
     xy,
     noded.edges.map(({ from, to }) => [from, to] as const),
   );
-  return mesh === null ? null : numbered(mesh, strip.ring, noded);
+  return mesh === null ? null : numbered(mesh, outline, noded);
 }
 
 /** For each node the longest edge that ends at it. */

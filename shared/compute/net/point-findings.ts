@@ -10,9 +10,12 @@ import { fixedText } from '#shared/text/number-text.ts';
 /** Field and hand rule may differ by this part of a drop before it is asked why. */
 export const RULES_APART = 0.1;
 
+/** A head that the tracing accuracy alone moves by more than this part of a drop is a matter of the hand. */
+export const STEEP = 0.03;
+
 /**
- * What is doubtful about one reading: the two rules far apart, a strip that could not be solved, a negative pressure, a
- * thin wall or an open end too near. `at` in working pixels; heads in the document's length unit.
+ * What is doubtful about one reading: the two rules far apart, a strip that could not be solved, a head
+ * that changes within a pixel or two, a negative pressure, a thin wall or an open end too near. `at` in working pixels; heads in the document's length unit.
  */
 export function questionReading(
   id: string,
@@ -44,6 +47,16 @@ export function questionReading(
         ),
       );
     }
+  }
+  const tremor = dropsByTremor(hand, field, ground);
+  if (tremor > STEEP) {
+    found.push(
+      about(
+        'question',
+        'steepHead',
+        `So near a tip or a corner, or between lines so close, the tracing accuracy alone moves the reading by ${fixedText(tremor, 2)} of a drop. Take it as no closer than twice or three times that, or move the point.`,
+      ),
+    );
   }
   if (pressureHead < 0) {
     found.push(
@@ -82,4 +95,14 @@ function isNearOpenEnd(at: SheetPx, way: HandReading): boolean {
     const join = open ? polylineOf(points) : null;
     return join !== null && nearestOnPolyline(join, at[0], at[1]).distance < cell;
   });
+}
+
+/** Drops by which the head changes over the tracing accuracy: |∇h|·accuracy by the head of a drop there. */
+function dropsByTremor(hand: HandAt, field: FieldAt | null, ground: ReadingGround): number {
+  if (field === null) return 0;
+  const { before, after } = hand.drops;
+  const perDrop = Math.abs(hand.headBefore - hand.headAfter) / Math.abs(after - before);
+  const perPx = Math.hypot(...field.gradient) * ground.map.unitsPerPx;
+  const drops = (perPx * ground.tracingAccuracyPx) / perDrop;
+  return Number.isFinite(drops) ? drops : 0;
 }

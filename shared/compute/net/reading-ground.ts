@@ -23,6 +23,7 @@ export type ReadingGround = {
   /** The head between the two lines of a strip, solved the first time it is asked for. */
   readonly fieldOf: FieldOfStrip;
   readonly slack: number;
+  readonly tracingAccuracyPx: number;
   readonly gammaW: number;
   /** Unit of a head or elevation with its datum, for words: "m LD". */
   readonly levelUnit: string;

@@ -18,6 +18,8 @@ export type HandAt = RuleReading & {
   readonly way: HandReading;
   readonly headBefore: number;
   readonly headAfter: number;
+  /** Drops lost at the lines before and after. */
+  readonly drops: { readonly before: number; readonly after: number };
 };
 
 /**
@@ -35,7 +37,8 @@ export function handAt(at: SheetPx, lie: InStrip, ground: ReadingGround): HandAt
   const dropsLost = varies
     ? dropsAt(totalHead, lie, ground)
     : before.drops + way.fraction * (after.drops - before.drops);
-  return { way, headBefore, headAfter, totalHead, dropsLost };
+  const drops = { before: before.drops, after: after.drops };
+  return { way, headBefore, headAfter, drops, totalHead, dropsLost };
 }
 
 /**
