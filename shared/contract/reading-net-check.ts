@@ -92,6 +92,8 @@ export const netCheckReading = z.object({
   enteredRatio: z.number(),
   measuredRatio: z.nullable(z.number()),
   judgedRatio: z.number(),
+  /** False without traced flow lines: then each interval is one cell from boundary to boundary, compared with the others only. */
+  hasChannels: z.boolean(),
   cells: z.array(checkedCell),
   meetings: z.array(checkedMeeting),
   channels: z.array(checkedChannel),

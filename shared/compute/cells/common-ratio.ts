@@ -58,11 +58,18 @@ export type CommonRatio = {
 
 /**
  * The B/L that the cells of a net have in common: the entered one where the cells measure about that, else the middle
- * of the measured ones, since heads hang on cells being alike and not on the figure entered.
+ * of the measured ones, since heads hang on cells being alike and not on the figure entered. Without channels the entered
+ * one says nothing of them.
  */
-export function commonRatioOf(cells: readonly NetCell[], entered: number, facts: CellFacts): CommonRatio {
+export function commonRatioOf(
+  cells: readonly NetCell[],
+  entered: number,
+  facts: CellFacts,
+  hasChannels = true,
+): CommonRatio {
   const flows = cells.map((cell) => cellFlow(cell, facts)).filter((flow) => flow !== null);
   const measured = middleValue(flows, entered);
-  const agrees = measured === null || Math.abs(Math.log(measured / entered)) <= Math.log(SAME_RATIO);
+  const agrees =
+    measured === null || (hasChannels && Math.abs(Math.log(measured / entered)) <= Math.log(SAME_RATIO));
   return { judgedBy: agrees ? entered : measured, measured, agrees };
 }

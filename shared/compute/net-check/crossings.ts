@@ -41,8 +41,8 @@ type Corner = { readonly head: string; readonly rail: Rail; readonly at: Pair; r
  * The places where head lines meet flow lines, impervious boundaries and the phreatic line, and where flow lines meet
  * potential boundaries of one head, each with its angle. Left out: corners of the ground, which give their own angle
  * (a potential boundary with an impervious one or with the phreatic line); faces of free outflow, which are neither
- * kind of line; and places at a singular point, where no angle is asked for. Directions are taken over half a cell to
- * either side. Working pixels, `accuracyPx` the tracing accuracy in them.
+ * kind of line; and places at a singular point, where no angle is asked for. Directions are taken over half the shorter
+ * side of a cell to either side. Working pixels, `accuracyPx` the tracing accuracy in them.
  */
 export function meetingsOf(model: NetModel, net: NetCells, accuracyPx: number): NetMeeting[] {
   const shapes = new Map<string, Polyline>(model.lines.map((line) => [line.id, line.shape]));
@@ -63,7 +63,7 @@ export function meetingsOf(model: NetModel, net: NetCells, accuracyPx: number): 
     )?.carrier;
     const flowShape = corner.rail.edge === null ? shapes.get(corner.rail.id) : carrier?.shape;
     if (headShape === undefined || flowShape === undefined) return [];
-    const angle = angleAt(corner.at, headShape, flowShape, kind, width, length, accuracyPx);
+    const angle = angleAt(corner.at, headShape, flowShape, kind, Math.min(width, length), accuracyPx);
     const flowId = corner.rail.edge === null ? corner.rail.id : carrier!.id;
     return [
       { kind, lines: [corner.head, flowId], at: corner.at, ...angle, length, width, cells: corner.cells },
@@ -102,14 +102,13 @@ function angleAt(
   head: Polyline,
   flow: Polyline,
   kind: MeetingKind,
-  width: number,
-  length: number,
+  cell: number,
   accuracyPx: number,
 ): Pick<NetMeeting, 'angleDeg' | 'tremorDeg' | 'isKnown'> {
   const headFit = kind === 'flowLineAtPotential' ? tangentOfBoundary : tangentOfCurve;
   const flowFit = kind === 'equipotentialAtImpervious' ? tangentOfBoundary : tangentOfCurve;
-  const onHead = fitAt(headFit, head, at, width, accuracyPx);
-  const onFlow = fitAt(flowFit, flow, at, length, accuracyPx);
+  const onHead = fitAt(headFit, head, at, cell, accuracyPx);
+  const onFlow = fitAt(flowFit, flow, at, cell, accuracyPx);
   const angle = angleBetween(onHead.direction, onFlow.direction);
   const degrees = 180 / Math.PI;
   return {

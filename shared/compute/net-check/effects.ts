@@ -14,14 +14,16 @@ export function cellEffect(cell: NetCell, expected: number, drops: number): numb
 
 /**
  * By how many drops the head beside a crossing may be off, from its angle alone. A head line that leaves the right angle
- * by δ has strayed by tan δ·B/2 along the flow when it has gone half a cell across it, and a drop is L long there:
- * effect = ΔNd·½·(B/L)·tan δ. First order: the flow line is taken as right. `offDeg`: δ, below 90 degrees.
+ * by δ has strayed by tan δ·b/2 along the flow when it has gone half a cell across it, and a drop is L long there:
+ * effect = ½·(b/L)·tan δ with b the lesser of B and L, since it turns back to its way within a cell. First order: the flow
+ * line is taken as right. `offDeg`: δ, below 90 degrees; L, B in one unit.
  */
 export function meetingEffect(
   { length, width }: Pick<NetMeeting, 'length' | 'width'>,
   offDeg: number,
 ): number {
-  return (0.5 * width * Math.tan((Math.min(offDeg, MOST_OFF_DEG) * Math.PI) / 180)) / length;
+  const slope = Math.tan((Math.min(offDeg, MOST_OFF_DEG) * Math.PI) / 180);
+  return (0.5 * Math.min(width, length) * slope) / length;
 }
 
 /** Lines that meet at a sharper angle than this run along one another; their effect is not extrapolated further. */

@@ -23,7 +23,7 @@ function cellsFinding(check: NetCheckReading, system: UnitSystem): Finding[] {
   const worst = check.faults.find((fault) => fault.of === 'cells');
   if (worst === undefined) return [];
   const { ratio, expected } = check.cells[worst.index]!;
-  const subject = `${counted(poor.length, 'cell is', 'cells are')} not ${shapeText(check.judgedRatio)}`;
+  const subject = `${counted(poor.length, 'cell is', 'cells are')} not ${shapeText(check.judgedRatio, check.hasChannels)}`;
   return [
     makeFinding(
       'question',
@@ -79,8 +79,9 @@ function channelsFinding(check: NetCheckReading): Finding[] {
   ];
 }
 
-function ratioFinding({ enteredRatio, measuredRatio, judgedRatio }: NetCheckReading): Finding[] {
-  if (measuredRatio === null || judgedRatio === enteredRatio) return [];
+function ratioFinding(check: NetCheckReading): Finding[] {
+  const { enteredRatio, measuredRatio, judgedRatio, hasChannels } = check;
+  if (!hasChannels || measuredRatio === null || judgedRatio === enteredRatio) return [];
   return [
     makeFinding(
       'question',

@@ -19,6 +19,7 @@ import {
 import { measuredFlowOf } from '#shared/compute/net-check/measured-flow.ts';
 import { factsOf, headPerDropBetween } from '#shared/compute/net-check/net-facts.ts';
 import { summaryOf } from '#shared/compute/net-check/summary.ts';
+import { shapeText } from '#shared/compute/net-check/words.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { CheckedCell, CheckedMeeting, NetCheckReading } from '#shared/contract/reading-net-check.ts';
 
@@ -51,7 +52,8 @@ export function netCheckOf(inputs: NetCheckInputs): NetCheckReading {
   const { model, cells: net, heads, enteredRatio, accuracyPx } = inputs;
   const facts = factsOf(net.cells, heads, enteredRatio, accuracyPx, inputs.relativeK);
   const channels = channelsOf(net.cells, facts);
-  const common = commonRatioOf(net.cells, enteredRatio, facts);
+  const hasChannels = model.lines.some(({ kind }) => kind === 'flowLine');
+  const common = commonRatioOf(net.cells, enteredRatio, facts, hasChannels);
   const shares = shareChannels(channels, common.judgedBy);
   const cells = checkedCells(inputs, facts, common.judgedBy, channels, shares);
   const meetings = inputs.hasCommonSection
@@ -69,12 +71,19 @@ export function netCheckOf(inputs: NetCheckInputs): NetCheckReading {
     enteredRatio,
     measuredRatio: common.measured,
     judgedRatio: common.judgedBy,
+    hasChannels,
     cells,
     meetings,
     channels: checkedChannels,
     ...measuredFlowOf(inputs, channels),
     faults: faultsOf(cells, meetings, common.judgedBy),
-    summary: summaryOf(cells, meetings, checkedChannels, common.judgedBy, inputs.hasCommonSection),
+    summary: summaryOf(
+      cells,
+      meetings,
+      checkedChannels,
+      shapeText(common.judgedBy, hasChannels),
+      inputs.hasCommonSection,
+    ),
   };
 }
 

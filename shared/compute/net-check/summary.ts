@@ -1,4 +1,4 @@
-import { counted, degrees, shapeText } from '#shared/compute/net-check/words.ts';
+import { counted, degrees } from '#shared/compute/net-check/words.ts';
 import type {
   CheckedCell,
   CheckedChannel,
@@ -6,12 +6,12 @@ import type {
   NetCheckReading,
 } from '#shared/contract/reading-net-check.ts';
 
-/** The check of a net in counts and in one line for the title block. */
+/** The check of a net in counts and in one line for the title block; `shape`: what its cells should be, see `shapeText`. */
 export function summaryOf(
   cells: readonly CheckedCell[],
   meetings: readonly CheckedMeeting[],
   channels: readonly CheckedChannel[],
-  judgedBy: number,
+  shape: string,
   hasCommonSection: boolean,
 ): NetCheckReading['summary'] {
   const judged = <T extends { judgement: string }>(items: readonly T[]) =>
@@ -19,7 +19,7 @@ export function summaryOf(
   const poor = <T extends { judgement: string }>(items: readonly T[]) =>
     items.filter(({ judgement }) => judgement === 'poor');
   const parts = [
-    ...cellsText(poor(cells).length, judgedBy),
+    ...cellsText(poor(cells).length, shape),
     ...anglesText(
       poor(meetings).filter(({ kind }) => kind === 'crossing'),
       'crossing',
@@ -38,12 +38,12 @@ export function summaryOf(
     anglesJudged: judged(meetings),
     anglesPoor: poor(meetings).length,
     channelsPoor: poor(channels).length,
-    text: parts.length > 0 ? parts.join(', ') : nothingPoor(judged(cells), judgedBy, hasCommonSection),
+    text: parts.length > 0 ? parts.join(', ') : nothingPoor(judged(cells), shape, hasCommonSection),
   };
 }
 
-function cellsText(count: number, judgedBy: number): string[] {
-  return count === 0 ? [] : [`${counted(count, 'cell', 'cells')} not ${shapeText(judgedBy)}`];
+function cellsText(count: number, shape: string): string[] {
+  return count === 0 ? [] : [`${counted(count, 'cell', 'cells')} not ${shape}`];
 }
 
 function anglesText(poor: readonly CheckedMeeting[], one: string, many: string): string[] {
@@ -58,8 +58,8 @@ function channelsText(count: number): string[] {
   return count === 0 ? [] : [`${counted(count, 'channel carries', 'channels carry')} another flow`];
 }
 
-function nothingPoor(cellsJudged: number, judgedBy: number, hasCommonSection: boolean): string {
+function nothingPoor(cellsJudged: number, shape: string, hasCommonSection: boolean): string {
   if (!hasCommonSection) return 'Cells not judged: the soils share no transformed section';
   if (cellsJudged === 0) return 'No cells to judge: trace flow lines and boundaries';
-  return `${counted(cellsJudged, 'cell', 'cells')} ${shapeText(judgedBy)}, no angle off square`;
+  return `${counted(cellsJudged, 'cell', 'cells')} ${shape}, no angle off square`;
 }

@@ -10,8 +10,9 @@ export function ratioText(ratio: number): string {
   return String(Math.round(100 * ratio) / 100);
 }
 
-/** What a cell of a net should be: square, or of a B/L. */
-export function shapeText(judgedBy: number): string {
+/** What the cells of a net should be: square, of a B/L, or without channels alike. */
+export function shapeText(judgedBy: number, hasChannels: boolean): string {
+  if (!hasChannels) return 'alike';
   return Math.abs(judgedBy - 1) < 0.005 ? 'square' : `of B/L ${ratioText(judgedBy)}`;
 }
 

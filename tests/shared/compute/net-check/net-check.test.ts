@@ -254,9 +254,19 @@ describe('a net that is not finished', () => {
 
   it('without flow lines has no cells and says what to do', () => {
     const check = checkOfDocument(withLines(drawn(apron), 'flowLine', () => null));
+    expect(check.hasChannels).toBe(false);
     expect(check.cells).toEqual([]);
     expect(check.measuredFlow).toBeNull();
     expect(check.summary.text).toBe('No cells to judge: trace flow lines and boundaries');
+  });
+
+  it('without flow lines between two boundaries compares whole intervals, not the ratio entered', () => {
+    const check = checkOfDocument(withLines(drawn(parabola), 'flowLine', () => null));
+    expect(check.cells).toHaveLength(parabola.net.drops);
+    // Three channels of squares: B/L = 3.
+    expect(Math.abs(check.measuredRatio! - 3)).toBeLessThan(0.1);
+    expect(questionNetCheck(check, 'SI')).toEqual([]);
+    expect(check.summary.text).toBe('9 cells alike, no angle off square');
   });
 
   it('with a face of free outflow is checked away from it', () => {
