@@ -1,3 +1,4 @@
+import { compareMeasured } from '#shared/compute/compare-measured.ts';
 import {
   extentOf,
   questionCellRatio,
@@ -27,6 +28,14 @@ import type { Finding, LineReading, NetReading, PointReading } from '#shared/con
  * elevations are in the document's length unit, pressures in kPa (SI) or lb/ft² (US); figures are unrounded.
  */
 export function readNet(document: FlowNetDocument): NetReading {
+  const reading = readLines(document);
+  return { ...reading, measured: compareMeasured(document, reading.points) };
+}
+
+/** All that is read off the lines, before it is held against what was measured. */
+type LinesRead = Omit<NetReading, 'measured'>;
+
+function readLines(document: FlowNetDocument): LinesRead {
   const inputs = singleInputs(document);
   const setOut = readSetOut(document);
   const points = placedPoints(document, setOut.map);
@@ -42,7 +51,7 @@ function withoutNet(
   tangles: readonly Finding[],
   inputs: SingleInputs,
   points: readonly PlacedPoint[],
-): NetReading {
+): LinesRead {
   const findings = [
     ...setOut.findings,
     ...tangles,
@@ -65,7 +74,7 @@ function readOnSection(
   setOut: SetOut,
   map: SectionMap,
   inputs: SingleInputs,
-): NetReading {
+): LinesRead {
   const prepared = prepareNet(document, setOut, map, inputs);
   const { frame, model, heads, ground, quantities, findings, finished } = prepared;
   const points = placedPoints(prepared.working, frame.map);

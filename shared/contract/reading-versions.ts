@@ -47,7 +47,9 @@ type FirstQuantities =
   | 'gammaW';
 
 const ADDED_TO_READING: Omit<NetReading, FirstReading> = {
-  phreatic: null,};
+  phreatic: null,
+  measured: [],
+};
 const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = { unitsPerPxUp: null, exaggeration: null };
 const ADDED_TO_LINE: Omit<NetReading['lines'][number], FirstLine> = {};
 const ADDED_TO_POINT: Omit<PointReading, FirstPoint> = { byHand: null, byField: null };

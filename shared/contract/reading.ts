@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import { measuredReading } from './reading-measured.ts';
 import { phreaticReading } from './reading-phreatic.ts';
 
 /**
@@ -137,6 +138,8 @@ export const netReading = z.object({
   setOut: setOutReading,
   lines: z.array(lineReading),
   points: z.array(pointReading),
+  /** Points at which something was measured, beside the net. */
+  measured: z.array(measuredReading),
   quantities: z.object({
     /** Nd as stated or counted; null while unfinished and with outlets at several heads, which have their own below. */
     drops: z.nullable(z.number()),
