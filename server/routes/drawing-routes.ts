@@ -69,6 +69,15 @@ export const drawingRoutes: RouteRecord[] = [
   }),
   defineRoute({
     method: 'post',
+    path: '/drawings/:drawingId/prepare-again',
+    access: onDrawing('drawing.edit'),
+    params: drawingParams,
+    reply: drawingDto,
+    handle: async ({ deps, params, actor }) =>
+      inTransaction(deps, (tx) => createDrawingService(tx).prepareAgain(params.drawingId, actor)),
+  }),
+  defineRoute({
+    method: 'post',
     path: '/drawings/:drawingId/archive',
     access: onDrawing('drawing.archive'),
     params: drawingParams,

@@ -9,6 +9,7 @@ import type { DrawingDto, drawingPatch } from '#shared/contract/drawings.ts';
 import { getDrawing } from './drawing-queries.ts';
 import { drawingTitle } from './drawing-title.ts';
 import { writeEvent } from './event-writer.ts';
+import { createRenderJobService } from './render-job-service.ts';
 import type { ServiceDeps } from './service-deps.ts';
 
 /** A file that has arrived whole and whose kind is known. */
@@ -109,6 +110,25 @@ export function createDrawingService({ manager, storage, clock, live, jobs }: Se
       return getDrawing(manager, drawingId);
     },
 
+    /**
+     * Asks once more for the sheets that a drawing lacks: of a file that was refused, could not be prepared, or of
+     * which pages were left out. Sheets there are stay as they are.
+     * @throws AppError conflict while the drawing is put away, is being prepared or lacks nothing
+     */
+    async prepareAgain(drawingId: string, actor: Actor): Promise<DrawingDto> {
+      const drawing = await findLocked(drawingId);
+      if (drawing.archivedAt) throw drawingPutAway();
+      const jobId = await createRenderJobService({ manager, clock, live, jobs }).startAgain(drawingId);
+      if (!jobId) throw nothingToPrepare();
+      await announce(
+        drawing,
+        actor,
+        'drawing.again',
+        `asked for ${drawingTitle(drawing)} to be prepared again`,
+      );
+      return getDrawing(manager, drawingId);
+    },
+
     archive: (drawingId: string, actor: Actor) => setArchived(drawingId, clock.now(), actor),
     restore: (drawingId: string, actor: Actor) => setArchived(drawingId, null, actor),
   };
@@ -122,4 +142,11 @@ const drawingPutAway = () =>
     'conflict',
     'This drawing is put away',
     'Bring the drawing back before you change anything in it.',
+  );
+
+const nothingToPrepare = () =>
+  conflict(
+    'conflict',
+    'There is nothing to prepare again',
+    'The drawing is being prepared, or all its pages are here already. Wait until it is ready, then look at it again.',
   );

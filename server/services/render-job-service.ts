@@ -125,6 +125,21 @@ export function createRenderJobService({
       await announce(job);
     },
 
+    /** Queues a job that has ended without all its pages; null when there is no such job. */
+    async startAgain(drawingId: string): Promise<string | null> {
+      const row = await manager.findOne(RenderJobEntity, {
+        where: { drawingId },
+        lock: { mode: 'pessimistic_write' },
+      });
+      const hasEnded = row !== null && row.state !== 'waiting' && row.state !== 'running';
+      // What was left out is told by the message of a job that is done.
+      if (!hasEnded || row.message === '') return null;
+      const anew = { ...waiting, attempts: 0, message: '', finishedAt: null };
+      await manager.update(RenderJobEntity, { id: row.id }, anew);
+      await jobs.enqueue(manager, 'render-drawing', row.id);
+      return row.id;
+    },
+
     /** Gives the job back unharmed, because the server stops; the attempt does not count. */
     async release(job: HeldJob): Promise<void> {
       if (await update(job, { ...waiting, attempts: job.attempts - 1 })) await announce(job);

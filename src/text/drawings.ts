@@ -62,6 +62,9 @@ export const drawingsText = {
   dropsOf: (count: number) => `${Number(count.toFixed(2))} drops`,
   notesOpen: (count: number) => plural(count, 'note open', 'notes open'),
   notRendered: 'This file could not be used.',
+  prepareAgain: 'Prepare again',
+  prepareAgainHint: 'Tries the same file once more. Worth it after the product was updated.',
+  preparingAgain: 'The file is read again.',
 
   uploads: 'Files on their way',
   uploadWaiting: 'Waiting',

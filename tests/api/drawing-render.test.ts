@@ -159,6 +159,45 @@ describe('the job that makes sheets', () => {
     ]);
   });
 
+  it('is asked for again by an engineer when pages are missing, and draws only those', async () => {
+    const page = { width: 144, height: 72 };
+    const { drawingId, jobId } = await uploaded(pdfDrawing([page, { ...page, brokenPicture: true }]));
+    const again = (who = caller) => who.post(`/drawings/${drawingId}/prepare-again`);
+    await again().expect(409);
+    await render(jobId, never);
+    const first = (await drawing(drawingId)).sheets;
+    const queued = await again().expect(200);
+    expect(queued.body.job).toMatchObject({ state: 'waiting', message: '' });
+    await again().expect(409);
+    const { drawn, create } = watchedProcess();
+    await rendering(create)(jobId, never);
+    expect(drawn).toEqual([2]);
+    const { job, sheets } = await drawing(drawingId);
+    expect(job.message).toMatch(/^Page 2 of 2 was left out\. A picture/);
+    expect(sheets).toEqual(first);
+    const events = await app.db.query('SELECT text FROM event WHERE drawing_id = $1 AND type = $2', [
+      drawingId,
+      'drawing.again',
+    ]);
+    expect(events).toEqual([{ text: expect.stringMatching(/^asked for .+ to be prepared again$/) }]);
+  });
+
+  it('is asked for again after a refusal, but not by who only reads, nor when nothing is missing', async () => {
+    const refused = await uploaded((await pngDrawing()).subarray(0, 900));
+    await render(refused.jobId, never);
+    const reader = await app.signIn('Ola Reed');
+    await addMember(app.db, damId, reader.person.id, 'reviewer', 'colleague');
+    await reader.caller.post(`/drawings/${refused.drawingId}/prepare-again`).expect(403);
+    await caller.post(`/drawings/${refused.drawingId}/prepare-again`).expect(200);
+    await render(refused.jobId, never);
+    expect((await drawing(refused.drawingId)).job.state).toBe('refused');
+    const whole = await uploaded(await pngDrawing({ seed: 31 }));
+    await render(whole.jobId, never);
+    await caller.post(`/drawings/${whole.drawingId}/prepare-again`).expect(409);
+    await caller.post(`/drawings/${refused.drawingId}/archive`).expect(200);
+    await caller.post(`/drawings/${refused.drawingId}/prepare-again`).expect(409);
+  });
+
   it('is done once, however often it is asked for', async () => {
     const { drawingId, jobId } = await uploaded(await pngDrawing({ seed: 2 }));
     const { drawn, create } = watchedProcess();

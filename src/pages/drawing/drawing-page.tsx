@@ -4,7 +4,6 @@ import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
 import { drawingQuery } from '#client/features/drawings/api/drawing-queries.ts';
-import { JobProgress } from '#client/features/drawings/components/drawing-entry.tsx';
 import { OriginalFile } from '#client/features/drawings/components/original-file.tsx';
 import { TitleForm } from '#client/features/drawings/components/title-form.tsx';
 import { formatFullDay } from '#client/lib/dates.ts';
@@ -13,6 +12,7 @@ import { damsText } from '#client/text/dams.ts';
 import { drawingFacts, drawingName, drawingsText as text } from '#client/text/drawings.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { useDamLive } from '../use-dam-live.ts';
+import { DrawingPreparation } from './drawing-preparation.tsx';
 import { PutDrawingAway } from './put-drawing-away.tsx';
 import { SheetAndSections } from './sheet-and-sections.tsx';
 
@@ -47,11 +47,7 @@ export function DrawingPage() {
             {text.drawingIsPutAway}
           </p>
         )}
-        {drawing.job.state === 'done' ? null : (
-          <div className="mb-4 border border-rule bg-film px-3.5 pt-1 pb-3">
-            <JobProgress drawing={drawing} />
-          </div>
-        )}
+        <DrawingPreparation drawing={drawing} canEdit={can.includes('drawing.edit')} />
         {sheet ? <SheetAndSections key={sheet.id} drawing={drawing} sheet={sheet} can={can} /> : null}
         <div className="mt-4 grid grid-cols-[minmax(0,1fr)] gap-4 lg:grid-cols-2">
           <Panel title={text.fields}>

@@ -37,6 +37,9 @@ export function useEditDrawing(drawingId: string) {
   });
 }
 
+export const usePrepareAgain = (drawingId: string) =>
+  useDrawingsWrite(() => sendJson('POST', `/drawings/${drawingId}/prepare-again`, drawingDto));
+
 export const useCreateSection = (sheetId: string) =>
   useDrawingsWrite((fields: SectionFields) =>
     sendJson('POST', `/sheets/${sheetId}/sections`, sectionDto, { body: { id: uuidv7(), ...fields } }),

@@ -41,10 +41,11 @@ export function DrawingEntry({ drawing }: { drawing: DrawingDto }) {
   );
 }
 
-/** How far the preparing of the sheets is, or why it was refused. Nothing once it is done. */
+/** How far the preparing of the sheets is, why it was refused, or which pages were left out; nothing otherwise. */
 export function JobProgress({ drawing }: { drawing: DrawingDto }) {
   const { job } = drawing;
-  if (job.state === 'done') return null;
+  if (job.state === 'done')
+    return job.message ? <p className="mt-1.5 mb-1 text-attention">{job.message}</p> : null;
   if (!isUnderWay(drawing))
     return (
       <p role="alert" className="mt-1.5 mb-1 text-wrong">
