@@ -66,6 +66,7 @@ function withoutNet(
     points: points.map((point) => withheldBy(point, findings)),
     quantities: quantitiesOf(null, inputs, document.unitSystem).quantities,
     phreatic: null,
+    netCheck: null,
   };
 }
 
@@ -91,6 +92,7 @@ function readOnSection(
     }),
     quantities,
     phreatic: phreaticOnSheet(prepared.phreatic, frame),
+    netCheck: prepared.netCheck,
   };
 }
 

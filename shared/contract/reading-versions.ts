@@ -48,6 +48,7 @@ type FirstQuantities =
 
 const ADDED_TO_READING: Omit<NetReading, FirstReading> = {
   phreatic: null,
+  netCheck: null,
   measured: [],
 };
 const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = { unitsPerPxUp: null, exaggeration: null };

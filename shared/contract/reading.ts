@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { measuredReading } from './reading-measured.ts';
+import { netCheckReading } from './reading-net-check.ts';
 import { phreaticReading } from './reading-phreatic.ts';
 
 /**
@@ -164,5 +165,7 @@ export const netReading = z.object({
     outlets: z.array(outletReading),
   }),
   phreatic: z.nullable(phreaticReading),
+  /** The check of the net's own drawing; null without a set-out net. */
+  netCheck: z.nullable(netCheckReading),
 });
 export type NetReading = z.infer<typeof netReading>;
