@@ -99,6 +99,9 @@ function endFinder(model: NetModel): (strip: Strip) => StripEnds {
   };
   return (strip) => {
     const endAt = (which: 0 | 1) => {
+      // Beside a boundary that the flow passes water comes and goes, as along a free face.
+      const passed = strip.held.find(({ way }) => way === which);
+      if (passed) return { id: passed.id, kind: 'freeFace' as const };
       const found = [
         ...footOf(lines.get(strip.before), strip.beforeShape, which),
         ...footOf(lines.get(strip.after), strip.afterShape, which),

@@ -3,6 +3,8 @@ import type { Polyline } from '#shared/compute/geometry/polyline.ts';
 import { type CarrierGraph, carrierGraph } from '#shared/compute/net/carrier-graph.ts';
 import { type Carrier, carryToFeet, type FootedLine } from '#shared/compute/net/feet.ts';
 import { joinBoundaries } from '#shared/compute/net/join-boundaries.ts';
+import { joinPieces } from '#shared/compute/net/join-pieces.ts';
+import { findLeavingLines } from '#shared/compute/net/leaving-lines.ts';
 import { type HeadLine, neighbourLinks } from '#shared/compute/net/neighbours.ts';
 import { checkLines } from '#shared/compute/net/net-checks.ts';
 import { linesOfKind, medianLength, type NetLine, netLinesOf } from '#shared/compute/net/net-lines.ts';
@@ -17,7 +19,13 @@ import type { Finding } from '#shared/contract/reading.ts';
 /** A gap or overshoot at the end of an equipotential is bridged up to this part of the usual equipotential's length. */
 const REACH_PART = 0.05;
 
-export type Equipotential = { readonly id: string; readonly line: NetLine; readonly footed: FootedLine };
+/** An equipotential from foot to foot; `members` are the traced pieces of which it is made, its own id first. */
+export type Equipotential = {
+  readonly id: string;
+  readonly members: readonly string[];
+  readonly line: NetLine;
+  readonly footed: FootedLine;
+};
 
 /** The traced net put in order, before heads: everything in base-raster pixels. */
 export type NetModel = {
@@ -52,8 +60,15 @@ export function modelNet(
   const reach = Math.max(3 * accuracyPx, REACH_PART * medianLength(traced.length > 0 ? traced : lines));
   const potentials = joinBoundaries(all, reach);
   const carriers = carriersOf(walls, flowLines, potentials);
-  const equipotentials = traced.map(
-    (line): Equipotential => ({ id: line.id, line, footed: carryToFeet(line.shape, carriers, reach) }),
+  const edges = [...walls, ...potentials].map(({ shape }) => shape);
+  const { whole, findings: joints } = joinPieces(traced, edges, reach);
+  const equipotentials = whole.map(
+    ({ line, members }): Equipotential => ({
+      id: line.id,
+      members,
+      line,
+      footed: carryToFeet(line.shape, carriers, reach),
+    }),
   );
   const heads = headLines(equipotentials, potentials);
   const links = neighbourLinks(heads, shapesOf(walls), shapesOf(flowLines));
@@ -73,7 +88,9 @@ export function modelNet(
     findings: [
       ...findings,
       ...unfinishedLines(document),
+      ...joints,
       ...checkLines(equipotentials, flowLines, walls, accuracyPx, reach),
+      ...findLeavingLines(equipotentials, lines, potentials, map.up, reach),
       // While a boundary is still to be marked, neither the order nor an open end says anything.
       ...(findings.length === 0
         ? [

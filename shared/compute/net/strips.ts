@@ -36,9 +36,9 @@ export type Strip = {
   readonly ways: ReadonlyArray<{ readonly points: readonly Pair[]; readonly open: boolean }>;
   /**
    * Parts of the ways along which a head is held: a boundary of its own head that the flow passes beside, or a further
-   * equipotential where the flow parts. None in most strips.
+   * equipotential where the flow parts; `way` is the one of `ways` that it belongs to. None in most strips.
    */
-  readonly held: ReadonlyArray<{ readonly id: string; readonly shape: Polyline }>;
+  readonly held: ReadonlyArray<{ readonly id: string; readonly shape: Polyline; readonly way: 0 | 1 }>;
 };
 
 /** The longest way along carriers that still closes a strip, in lengths of its longer line. */
@@ -93,10 +93,12 @@ function outlined(before: StripLine, far: StripLine, graph: CarrierGraph, limit:
     open: closing.open,
   });
   const ways = [between(start, 0, 0), between(end, lengthOf(beforeShape), lengthOf(afterShape))];
-  const held = [...start.stretches, ...end.stretches].flatMap(({ carrier, points }) => {
-    const shape = carrier.held === 'atOneHead' ? polylineOf(points) : null;
-    return shape === null ? [] : [{ id: carrier.id, shape }];
-  });
+  const held = [start, end].flatMap(({ stretches }, i) =>
+    stretches.flatMap(({ carrier, points }) => {
+      const shape = carrier.held === 'atOneHead' ? polylineOf(points) : null;
+      return shape === null ? [] : [{ id: carrier.id, shape, way: i === 0 ? (0 as const) : (1 as const) }];
+    }),
+  );
   return { before: before.id, after: far.id, beforeShape, afterShape, ring, ways, held };
 }
 

@@ -6,14 +6,12 @@ import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
 import { type SketchedLine, sketchedNet } from '#tests/support/exact-nets/sketched-net.ts';
 
-/** What a net sketched by straight pieces gives cause to look at. */
-const AS_DRAWN = ['cellsNotSquare', 'cellRatioDiffers'];
-
 const codesOf = (reading: ReturnType<typeof readNet>) =>
-  reading.findings
-    .filter((found) => !AS_DRAWN.includes(found.code))
-    .filter((found) => found.weight !== 'note')
-    .map((found) => found.code);
+  reading.findings.filter((found) => found.weight !== 'note').map((found) => found.code);
+
+/** Codes of what withholds the figures: a net sketched by straight pieces has cells that may well be asked about. */
+const gravesOf = (reading: ReturnType<typeof readNet>) =>
+  reading.findings.filter(({ weight }) => weight === 'wrong' || weight === 'missing').map(({ code }) => code);
 
 describe.each([
   ['between two drops', 100.2],
@@ -25,7 +23,8 @@ describe.each([
   const reading = readNet(document);
 
   it('is read, and its answer keeps to the schema', () => {
-    expect(codesOf(reading)).toEqual([]);
+    // The tailwater takes two thirds of a channel by the closed form; counted, it is a whole one.
+    expect(codesOf(reading)).toEqual(tailwater === 100 ? [] : ['lastChannelInPart']);
     expect(reading.state).toBe('read');
     expect(netReading.safeParse(reading).error?.issues ?? []).toEqual([]);
   });
@@ -74,7 +73,7 @@ describe.each([
       value.water === 'tailwater' ? { ...value, water: null, head: tailwater } : value,
     );
     const same = readNet(changed(own, 'waterLevels', (value) => ({ ...value, tailwater: null })));
-    expect(codesOf(same)).toEqual([]);
+    expect(codesOf(same)).toEqual(codesOf(reading));
     expect(same.points.map(({ totalHead }) => totalHead)).toEqual(
       reading.points.map(({ totalHead }) => totalHead),
     );
@@ -192,7 +191,7 @@ describe('water that parts to two sides', () => {
 
   it('is counted along each side by the head per drop of the whole net', () => {
     const reading = read(canal());
-    expect(codesOf(reading)).toEqual([]);
+    expect(gravesOf(reading)).toEqual([]);
     const { outlets, headPerDrop } = reading.quantities;
     expect(headPerDrop).toBeCloseTo(1, 9);
     expect(outlets.map(({ label, drops }) => [label, drops])).toEqual([
@@ -222,8 +221,8 @@ describe('water that parts to two sides', () => {
   it('honours a head typed on a side, and reports one that contradicts its place', () => {
     const typed = (head: number) =>
       canal().map((line) => (line.through[0]![0] === 3.2 ? { ...line, head } : line));
-    expect(codesOf(read(typed(8)))).toEqual([]);
-    expect(codesOf(read(typed(5.5)))).toContain('typedOutOfOrder');
+    expect(gravesOf(read(typed(8)))).toEqual([]);
+    expect(gravesOf(read(typed(5.5)))).toContain('typedOutOfOrder');
   });
 });
 
@@ -294,7 +293,7 @@ describe('a lower water that feeds a drain from its own side', () => {
   );
 
   it('is counted back from the fork', () => {
-    expect(codesOf(reading)).toEqual([]);
+    expect(gravesOf(reading)).toEqual([]);
     const counted = reading.lines.filter(({ source }) => source === 'counted').map((line) => line.drops);
     expect(counted).toEqual([4, 1, 2, 3, 2, 3]);
     expect(reading.quantities.outlets.map(({ label, drops }) => [label, drops])).toEqual([
