@@ -52,3 +52,33 @@ export function flowLinesOf(
     at: (part: number) => net.placeAt(part * net.drops, channel),
   }));
 }
+
+/** What differs between nets of a structure on level ground that goes on without end beside and below it. */
+export type OpenGroundNet = Pick<ExactNet, 'headwater' | 'drops' | 'channels' | 'headAt' | 'placeAt'> & {
+  readonly tailwater: number;
+  /** The structure's outline, in the order of the flow. */
+  readonly outline: readonly ExactLine['at'][];
+};
+
+/** How much longer than the traced squares the two submerged faces are drawn. */
+const FACE_BEYOND = 1.15;
+
+/** The lines of such a net: both faces, the outline, the equipotentials, and flow lines none of which is a boundary. */
+export function openGroundNet({ outline, ...net }: OpenGroundNet): ExactNet {
+  const face = FACE_BEYOND * net.channels;
+  return {
+    ...net,
+    outHead: net.tailwater,
+    bounded: false,
+    lines: [
+      { line: 'submergedFace', water: 'headwater', at: (part) => net.placeAt(0, part * face) },
+      { line: 'submergedFace', water: 'tailwater', at: (part) => net.placeAt(net.drops, part * face) },
+      ...outline.map((at) => ({ line: 'impervious' as const, water: null, at })),
+      ...equipotentialsOf(net),
+      ...flowLinesOf(
+        net,
+        Array.from({ length: net.channels }, (_, i) => i + 1),
+      ),
+    ],
+  };
+}

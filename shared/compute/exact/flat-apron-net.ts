@@ -1,9 +1,4 @@
-import {
-  type ExactNet,
-  type ExactPlace,
-  equipotentialsOf,
-  flowLinesOf,
-} from '#shared/compute/exact/exact-net.ts';
+import { type ExactNet, type ExactPlace, openGroundNet } from '#shared/compute/exact/exact-net.ts';
 import { flatApronHead, flatApronPoint } from '#shared/compute/exact/flat-apron.ts';
 
 export type FlatApronNet = {
@@ -36,26 +31,14 @@ export function flatApronNet({
     const [x, depth] = flatApronPoint(apron, apron.H * (1 - dropsLost / drops), (Math.PI * channel) / drops);
     return [middle[0] + x, middle[1] - depth];
   };
-  const bed = 1.15 * channels;
-  return {
+  return openGroundNet({
     headwater,
     tailwater,
-    outHead: tailwater,
     drops,
     channels,
-    bounded: false,
     placeAt,
     headAt: (offset, elevation) =>
       tailwater + flatApronHead(apron, offset - middle[0], middle[1] - elevation),
-    lines: [
-      { line: 'submergedFace', water: 'headwater', at: (part) => placeAt(0, part * bed) },
-      { line: 'submergedFace', water: 'tailwater', at: (part) => placeAt(drops, part * bed) },
-      { line: 'impervious', water: null, at: (part) => placeAt(part * drops, 0) },
-      ...equipotentialsOf({ drops, channels, placeAt }),
-      ...flowLinesOf(
-        { drops, placeAt },
-        Array.from({ length: channels }, (_, i) => i + 1),
-      ),
-    ],
-  };
+    outline: [(part) => placeAt(part * drops, 0)],
+  });
 }

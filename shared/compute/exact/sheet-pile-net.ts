@@ -1,9 +1,4 @@
-import {
-  type ExactNet,
-  type ExactPlace,
-  equipotentialsOf,
-  flowLinesOf,
-} from '#shared/compute/exact/exact-net.ts';
+import { type ExactNet, type ExactPlace, openGroundNet } from '#shared/compute/exact/exact-net.ts';
 
 export type SheetPileNet = {
   /** Depth of the pile below the level ground, s. */
@@ -31,14 +26,11 @@ export function sheetPileNet({ depth, headwater, tailwater, drops, channels, hea
   ];
   const placeAt = (dropsLost: number, channel: number) =>
     place(Math.PI * (1 - dropsLost / drops), (Math.PI * channel) / drops);
-  const bed = 1.15 * channels;
-  return {
+  return openGroundNet({
     headwater,
     tailwater,
-    outHead: tailwater,
     drops,
     channels,
-    bounded: false,
     placeAt,
     headAt: (offset, elevation) => {
       const x = offset - head[0];
@@ -48,15 +40,6 @@ export function sheetPileNet({ depth, headwater, tailwater, drops, channels, hea
       const phi = Math.acos(Math.min(1, Math.max(-1, cosine)));
       return tailwater + (lost / Math.PI) * (Math.PI / 2 + (x > 0 ? -phi : phi));
     },
-    lines: [
-      { line: 'submergedFace', water: 'headwater', at: (part) => placeAt(0, part * bed) },
-      { line: 'submergedFace', water: 'tailwater', at: (part) => placeAt(drops, part * bed) },
-      { line: 'impervious', water: null, at: (part) => [head[0], head[1] - depth * part] },
-      ...equipotentialsOf({ drops, channels, placeAt }),
-      ...flowLinesOf(
-        { drops, placeAt },
-        Array.from({ length: channels }, (_, i) => i + 1),
-      ),
-    ],
-  };
+    outline: [(part) => [head[0], head[1] - depth * part]],
+  });
 }

@@ -1,9 +1,4 @@
-import {
-  type ExactNet,
-  type ExactPlace,
-  equipotentialsOf,
-  flowLinesOf,
-} from '#shared/compute/exact/exact-net.ts';
+import { type ExactNet, type ExactPlace, openGroundNet } from '#shared/compute/exact/exact-net.ts';
 
 export type CentredPileNet = {
   /** Width of the floor along the flow, and depth of the pile under its middle. */
@@ -34,14 +29,11 @@ export function centredPileNet(options: CentredPileNet): ExactNet {
     const [x, y] = rootOf(re * re - im * im - depth * depth, 2 * re * im, re);
     return [middle[0] + x, middle[1] - y];
   };
-  const bed = 1.15 * channels;
-  return {
+  return openGroundNet({
     headwater,
     tailwater,
-    outHead: tailwater,
     drops,
     channels,
-    bounded: false,
     placeAt,
     headAt: (offset, elevation) => {
       const x = offset - middle[0];
@@ -50,18 +42,8 @@ export function centredPileNet(options: CentredPileNet): ExactNet {
       const cosine = (Math.hypot(re + c, im) - Math.hypot(re - c, im)) / (2 * c);
       return tailwater + ((headwater - tailwater) / Math.PI) * Math.acos(Math.min(1, Math.max(-1, cosine)));
     },
-    lines: [
-      { line: 'submergedFace', water: 'headwater', at: (part) => placeAt(0, part * bed) },
-      { line: 'submergedFace', water: 'tailwater', at: (part) => placeAt(drops, part * bed) },
-      { line: 'impervious', water: null, at: (part) => outlineAt(part / 2, options) },
-      { line: 'impervious', water: null, at: (part) => outlineAt((1 + part) / 2, options) },
-      ...equipotentialsOf({ drops, channels, placeAt }),
-      ...flowLinesOf(
-        { drops, placeAt },
-        Array.from({ length: channels }, (_, i) => i + 1),
-      ),
-    ],
-  };
+    outline: [(part) => outlineAt(part / 2, options), (part) => outlineAt((1 + part) / 2, options)],
+  });
 }
 
 /** The square root with y ≥ 0 whose x has the sign of `side`. */

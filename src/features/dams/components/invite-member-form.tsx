@@ -1,10 +1,6 @@
-import { type FormEvent, useState } from 'react';
-import { Button } from '#client/components/button.tsx';
-import { TextField } from '#client/components/field.tsx';
+import { useState } from 'react';
+import { InvitationFrame } from '#client/components/invitation-frame.tsx';
 import { useNotice } from '#client/components/notice.tsx';
-import { ProblemNote } from '#client/components/problem-note.tsx';
-import { fieldMessage } from '#client/lib/api-problem.ts';
-import { commonText } from '#client/text/common.ts';
 import { damSettingsText as settings } from '#client/text/dam-settings.ts';
 import type { DamRole } from '#shared/contract/actions.ts';
 import { useInviteMember } from '../api/dam-mutations.ts';
@@ -21,35 +17,27 @@ export function InviteMemberForm({ damId }: { damId: string }) {
     setEmail('');
     setRoles([]);
   };
-  const submit = (event: FormEvent) => {
-    event.preventDefault();
+  const submit = () => {
     setIsMissing(roles.length === 0);
-    if (roles.length > 0 && !invite.isPending) invite.mutate({ email, roles }, { onSuccess: invited });
+    if (roles.length > 0) invite.mutate({ email, roles }, { onSuccess: invited });
   };
   return (
-    <form onSubmit={submit} className="flex flex-col gap-3">
-      <p className="m-0 text-ink-2">{settings.addPersonLead}</p>
-      <ProblemNote error={invite.error} />
-      <TextField
-        label={settings.email}
-        type="email"
-        required
-        autoComplete="off"
-        error={fieldMessage(invite.error, 'email')}
-        value={email}
-        onChange={(event) => setEmail(event.target.value)}
-      />
+    <InvitationFrame
+      lead={settings.addPersonLead}
+      emailLabel={settings.email}
+      email={email}
+      onEmail={setEmail}
+      action={settings.invite}
+      error={invite.error}
+      busy={invite.isPending}
+      onSubmit={submit}
+    >
       <RoleChecks legend={settings.parts} roles={roles} onChange={setRoles} explained />
       {isMissing && roles.length === 0 ? (
         <p role="alert" className="m-0 text-sm text-wrong">
           {settings.onePart}
         </p>
       ) : null}
-      <div>
-        <Button type="submit" look="main" busy={invite.isPending} busyLabel={commonText.sending}>
-          {settings.invite}
-        </Button>
-      </div>
-    </form>
+    </InvitationFrame>
   );
 }

@@ -1,10 +1,7 @@
-import { type FormEvent, useState } from 'react';
-import { Button } from '#client/components/button.tsx';
-import { CheckField, TextField } from '#client/components/field.tsx';
+import { useState } from 'react';
+import { CheckField } from '#client/components/field.tsx';
+import { InvitationFrame } from '#client/components/invitation-frame.tsx';
 import { useNotice } from '#client/components/notice.tsx';
-import { ProblemNote } from '#client/components/problem-note.tsx';
-import { fieldMessage } from '#client/lib/api-problem.ts';
-import { commonText } from '#client/text/common.ts';
 import { peopleText as text } from '#client/text/people.ts';
 import { useInvitePerson } from '../api/people-queries.ts';
 
@@ -18,34 +15,23 @@ export function InvitePersonForm() {
     setEmail('');
     setAdmin(false);
   };
-  const submit = (event: FormEvent) => {
-    event.preventDefault();
-    if (!invite.isPending) invite.mutate({ email, admin }, { onSuccess: invited });
-  };
   return (
-    <form onSubmit={submit} className="flex flex-col gap-3">
-      <p className="m-0 text-ink-2">{text.inviteLead}</p>
-      <ProblemNote error={invite.error} />
-      <TextField
-        label={text.email}
-        type="email"
-        required
-        autoComplete="off"
-        error={fieldMessage(invite.error, 'email')}
-        value={email}
-        onChange={(event) => setEmail(event.target.value)}
-      />
+    <InvitationFrame
+      lead={text.inviteLead}
+      emailLabel={text.email}
+      email={email}
+      onEmail={setEmail}
+      action={text.sendInvitation}
+      error={invite.error}
+      busy={invite.isPending}
+      onSubmit={() => invite.mutate({ email, admin }, { onSuccess: invited })}
+    >
       <CheckField
         label={text.asAdmin}
         hint={text.asAdminHint}
         checked={admin}
         onChange={(event) => setAdmin(event.target.checked)}
       />
-      <div>
-        <Button type="submit" look="main" busy={invite.isPending} busyLabel={commonText.sending}>
-          {text.sendInvitation}
-        </Button>
-      </div>
-    </form>
+    </InvitationFrame>
   );
 }
