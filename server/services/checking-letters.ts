@@ -42,8 +42,8 @@ export function scheduleFigures({ document, reading }: RevisionPayload): Figures
       'Point',
       `Elevation, ${elevation}`,
       'Drops lost',
-      `Total head, ${elevation}, ± provisional`,
-      `Pore pressure, ${unitNames(unitSystem).pressure}, ± provisional`,
+      `Total head, ${elevation}, ± at 95 %`,
+      `Pore pressure, ${unitNames(unitSystem).pressure}, ± at 95 %`,
     ],
     rows: more > 0 ? [...rows, [`and ${more} more`, '', '', '', '']] : rows,
   };

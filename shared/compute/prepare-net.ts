@@ -1,4 +1,6 @@
 import { cellsOf, type NetCells } from '#shared/compute/cells/cells.ts';
+import { NO_QUANTITY_DOUBT, netDoubtOf, quantityDoubtOf } from '#shared/compute/doubt/net-doubt.ts';
+import type { NetDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import { fieldsOnDemand } from '#shared/compute/field/strip-fields.ts';
 import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
@@ -10,10 +12,10 @@ import {
   questionPermeability,
   questionUnitWeight,
 } from '#shared/compute/net/input-questions.ts';
+import { type IntervalQuestions, questionIntervals } from '#shared/compute/net/interval-questions.ts';
 import { headsOf, type NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind } from '#shared/compute/net/net-lines.ts';
 import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
-import { placeDoubtOf } from '#shared/compute/net/provisional-doubt.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, placePoint } from '#shared/compute/net/read-point.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
@@ -27,7 +29,8 @@ import { readPhreatic } from '#shared/compute/phreatic/read-phreatic.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { SetOut } from '#shared/compute/set-out.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
-import { type CommonAnisotropy, commonAnisotropy } from '#shared/compute/soils/anisotropy.ts';
+import { anisotropyOf } from '#shared/compute/soils/anisotropy.ts';
+import { type SoilGround, soilGroundOf } from '#shared/compute/soils/soil-ground.ts';
 import { steadyTraces } from '#shared/compute/steady-traces.ts';
 import {
   findingOnSheet,
@@ -37,6 +40,7 @@ import {
 } from '#shared/compute/working-frame.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { Finding, NetReading } from '#shared/contract/reading.ts';
+import type { QuantityDoubt } from '#shared/contract/reading-doubt.ts';
 import type { NetCheckReading } from '#shared/contract/reading-net-check.ts';
 import type { PhreaticReading } from '#shared/contract/reading-phreatic.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
@@ -53,6 +57,7 @@ export type PreparedNet = {
   readonly model: NetModel;
   readonly heads: NetHeads;
   readonly cells: NetCells;
+  readonly soils: SoilGround;
   readonly ground: ReadingGround;
   readonly quantities: NetReading['quantities'];
   readonly findings: readonly Finding[];
@@ -60,6 +65,9 @@ export type PreparedNet = {
   readonly netCheck: NetCheckReading;
   /** In the working frame; null in a section without a phreatic line. */
   readonly phreatic: PhreaticReading | null;
+  readonly doubt: QuantityDoubt;
+  /** Pairs of head lines between which one seems to be missing. */
+  readonly wide: IntervalQuestions['wide'];
   /** True when nothing is missing or wrong, so that figures may be given. */
   readonly finished: boolean;
 };
@@ -81,8 +89,8 @@ export function prepareNet(
   sheetMap: SectionMap,
   inputs: SingleInputs,
 ): PreparedNet {
-  const { water, permeability, count } = inputs;
-  const frame = workingFrameOf(sheetMap, anisotropyOf(document, inputs, setOut.impliedRatio));
+  const { water, count } = inputs;
+  const frame = workingFrameOf(sheetMap, anisotropyOf(document, inputs.permeability, setOut.impliedRatio));
   const working = steadyTraces(tracesInWorkingFrame(document, frame), count.tracingAccuracyPx);
   const { map } = frame;
   const model = modelNet(working, map, water, count.tracingAccuracyPx);
@@ -95,9 +103,11 @@ export function prepareNet(
     model.order,
     slackOf(inputs),
   );
+  const soils = soilGroundOf(working, frame, model, inputs, setOut.impliedRatio);
+  const counted = { ...inputs, permeability: soils.permeability };
   const { quantities, findings: quantityFindings } = quantitiesOf(
     { order: model.order, heads, channels },
-    inputs,
+    counted,
     document.unitSystem,
   );
   const cells = cellsOf(model, count.tracingAccuracyPx);
@@ -109,11 +119,20 @@ export function prepareNet(
     accuracyPx: count.tracingAccuracyPx,
     gammaW: water.gammaW,
     quantities,
-    relativeK: relativeKOf(working),
+    relativeK: soils.relativeK,
     hasCommonSection: frame.kind !== 'none',
     toSheet: frame.toSheet,
   });
   const phreatic = readPhreatic(model, heads, map, count.tracingAccuracyPx, levelUnit);
+  const intervals = questionIntervals({
+    model,
+    cells,
+    heads,
+    enteredRatio: count.cellRatio,
+    statedChannels: count.channels,
+    accuracyPx: count.tracingAccuracyPx,
+    relativeK: soils.relativeK,
+  });
   const netFindings = [
     ...model.findings,
     ...heads.findings,
@@ -123,17 +142,19 @@ export function prepareNet(
     ...questionLevels(water, model.potentials),
     ...questionHeadwater(water.headwater, extentOf(model.lines, map), document.unitSystem),
     ...questionUnitWeight(water.gammaW, document.unitSystem),
-    ...questionPermeability(permeability),
+    ...questionPermeability(soils.permeability),
     ...questionCellRatio(count.cellRatio),
-    ...questionSoils(model),
+    ...soils.findings,
     ...channels.findings,
     ...quantityFindings,
+    ...intervals.findings,
   ];
   const findings = [
     ...setOut.findings,
     ...netFindings.map((found) => findingOnSheet(found, frame)),
     ...questionNetCheck(netCheck, document.unitSystem),
   ];
+  const doubt = netDoubtOf(document, setOut, frame, model, heads, inputs);
   const finished = !withholdsFigures(findings) && heads.count !== null;
   return {
     frame,
@@ -142,28 +163,15 @@ export function prepareNet(
     heads,
     cells,
     netCheck,
-    ground: groundOf(model, heads, setOut, map, inputs, levelUnit),
+    soils,
+    ground: groundOf(model, heads, frame, soils, doubt, inputs, levelUnit),
+    doubt: finished ? quantityDoubtOf(doubt, quantities, netCheck.cells, counted) : NO_QUANTITY_DOUBT,
     quantities,
     findings,
     phreatic: phreatic.reading,
+    wide: intervals.wide,
     finished,
   };
-}
-
-/** kh/kv and dip of the soils that are said to lie somewhere in the section. */
-function anisotropyOf(
-  document: FlowNetDocument,
-  inputs: SingleInputs,
-  impliedRatio: number | null,
-): CommonAnisotropy {
-  const soils = entitiesOf(document, 'soil').filter(({ value }) => value.places.length > 0);
-  return commonAnisotropy([inputs.permeability, ...soils.map(({ value }) => value)], impliedRatio);
-}
-
-/** One soil for all cells; where several are placed, which of them a cell lies in is not known here. */
-function relativeKOf(document: FlowNetDocument): () => number | null {
-  const several = entitiesOf(document, 'soil').some(({ value }) => value.places.length > 0);
-  return () => (several ? null : 1);
 }
 
 /** Pixels by which a traced line may miss what it is meant to meet. */
@@ -190,22 +198,23 @@ function waterlineFindings(
 function groundOf(
   model: NetModel,
   heads: NetHeads,
-  setOut: SetOut,
-  map: SectionMap,
+  frame: WorkingFrame,
+  soils: SoilGround,
+  doubt: NetDoubt,
   inputs: SingleInputs,
   levelUnit: string,
 ): ReadingGround {
-  const { tracingAccuracyPx, knownPointAccuracyPx } = inputs.count;
   const shapes = (...kinds: Parameters<typeof linesOfKind>[1][]) =>
     linesOfKind(model.lines, ...kinds).map((line) => line.shape);
   const fieldGround = {
-    map,
+    map: frame.map,
     heads,
     walls: model.walls.map((wall) => wall.shape),
     freeFaces: model.potentials
       .filter((potential) => potential.level === null)
       .map((potential) => potential.shape),
-    soilBoundaries: shapes('soilBoundary'),
+    soilBoundaries: soils.boundaries,
+    tensorAt: soils.tensorAt,
     slack: slackOf(inputs),
   };
   return {
@@ -218,12 +227,8 @@ function groundOf(
     tracingAccuracyPx: inputs.count.tracingAccuracyPx,
     gammaW: inputs.water.gammaW,
     levelUnit,
-    placeDoubt: placeDoubtOf(
-      setOut.reading.residual,
-      knownPointAccuracyPx,
-      tracingAccuracyPx,
-      map.elevationPerPx,
-    ),
+    doubt,
+    toSheet: (place) => frame.toSheet(place),
     unequal: heads.count?.unequal ?? false,
   };
 }

@@ -1,10 +1,12 @@
 import { compareMeasured } from '#shared/compute/compare-measured.ts';
+import { NO_QUANTITY_DOUBT } from '#shared/compute/doubt/net-doubt.ts';
 import {
   extentOf,
   questionCellRatio,
   questionPermeability,
   questionPlace,
 } from '#shared/compute/net/input-questions.ts';
+import { markWide } from '#shared/compute/net/interval-questions.ts';
 import type { NetHeads } from '#shared/compute/net/net-heads.ts';
 import { linesOfKind, netLinesOf } from '#shared/compute/net/net-lines.ts';
 import type { NetModel } from '#shared/compute/net/net-model.ts';
@@ -67,6 +69,7 @@ function withoutNet(
     quantities: quantitiesOf(null, inputs, document.unitSystem).quantities,
     phreatic: null,
     netCheck: null,
+    doubt: NO_QUANTITY_DOUBT,
   };
 }
 
@@ -86,13 +89,16 @@ function readOnSection(
     setOut: setOut.reading,
     lines: linesRead(model, heads),
     points: points.map((point) => {
-      const reading = finished ? readPoint(point, ground) : withheldBy(point, findings);
+      const reading = finished
+        ? markWide(readPoint(point, ground), prepared.wide)
+        : withheldBy(point, findings);
       const far = questionPlace(point, extent, document.unitSystem);
       return pointOnSheet({ ...reading, findings: [...reading.findings, ...far] }, frame);
     }),
     quantities,
     phreatic: phreaticOnSheet(prepared.phreatic, frame),
     netCheck: prepared.netCheck,
+    doubt: prepared.doubt,
   };
 }
 
@@ -127,11 +133,13 @@ function linesRead(model: NetModel, heads: NetHeads): LineReading[] {
   const boundaries = model.potentials.flatMap(({ id, members }) =>
     members.map((member) => ({ id: member, of: id })),
   );
-  const traced = model.equipotentials.map(({ id }) => ({ id, of: id }));
+  const traced = model.equipotentials.flatMap(({ id, members }) =>
+    members.map((member) => ({ id: member, of: id })),
+  );
   return [...boundaries, ...traced].map(({ id, of }) => {
     const line = heads.byId.get(of);
     if (line !== undefined) return { id, drops: line.drops, head: line.head, source: line.source };
-    return numberedByPlace(model, id);
+    return { ...numberedByPlace(model, of), id };
   });
 }
 

@@ -49,11 +49,17 @@ type FirstQuantities =
 const ADDED_TO_READING: Omit<NetReading, FirstReading> = {
   phreatic: null,
   netCheck: null,
+  doubt: { headLost: null, headPerDrop: null, seepageFactor: null, seepageShares: [] },
   measured: [],
 };
 const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = { unitsPerPxUp: null, exaggeration: null };
 const ADDED_TO_LINE: Omit<NetReading['lines'][number], FirstLine> = {};
-const ADDED_TO_POINT: Omit<PointReading, FirstPoint> = { byHand: null, byField: null };
+const ADDED_TO_POINT: Omit<PointReading, FirstPoint> = {
+  byHand: null,
+  byField: null,
+  pressureHeadPlusMinus: null,
+  doubt: null,
+};
 const ADDED_TO_QUANTITIES: Omit<Quantities, FirstQuantities> = { shapeFactor: null, outlets: [] };
 
 /**

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import { doubtShares, quantityDoubt } from './reading-doubt.ts';
 import { measuredReading } from './reading-measured.ts';
 import { netCheckReading } from './reading-net-check.ts';
 import { phreaticReading } from './reading-phreatic.ts';
@@ -89,11 +90,15 @@ export const pointReading = z.object({
    */
   between: z.nullable(z.object({ before: z.string(), after: z.string(), fraction: z.number() })),
   totalHead: z.nullable(z.number()),
+  /** All ± hold 95 %. */
   totalHeadPlusMinus: z.nullable(z.number()),
   pressureHead: z.nullable(z.number()),
+  pressureHeadPlusMinus: z.nullable(z.number()),
   /** u = γw(h − z); 0 above the phreatic line (suction left out), where the heads are null. */
   porePressure: z.nullable(z.number()),
   porePressurePlusMinus: z.nullable(z.number()),
+  /** Share of each source in the ± of the total head and of the pore pressure; null where there is no figure. */
+  doubt: z.nullable(z.object({ totalHead: doubtShares, porePressure: doubtShares })),
   /** By hand's rule, which explains the figure; null where nothing is read. */
   byHand: z.nullable(z.object({ totalHead: z.number(), dropsLost: z.number() })),
   /**
@@ -167,5 +172,6 @@ export const netReading = z.object({
   phreatic: z.nullable(phreaticReading),
   /** The check of the net's own drawing; null without a set-out net. */
   netCheck: z.nullable(netCheckReading),
+  doubt: quantityDoubt,
 });
 export type NetReading = z.infer<typeof netReading>;

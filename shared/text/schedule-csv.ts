@@ -20,10 +20,10 @@ export function scheduleCsv(
     `Elevation, ${elevation}`,
     'Drops lost',
     `Total head, ${elevation}`,
-    `Total head ± provisional, ${units.length}`,
+    `Total head ± at 95 %, ${units.length}`,
     `Pressure head, ${units.length}`,
     `Pore pressure, ${units.pressure}`,
-    `Pore pressure ± provisional, ${units.pressure}`,
+    `Pore pressure ± at 95 %, ${units.pressure}`,
     'Remark',
   ];
   return csvText([head, ...reading.points.map(rowOf)]);

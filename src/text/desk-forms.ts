@@ -189,7 +189,7 @@ export const countText = {
   sectionSoil: 'the soil of the section',
   tracing: 'Accuracy of tracing, px',
   knownPoints: 'Accuracy of the known points, px',
-  accuracyHint: 'For the provisional ±.',
+  accuracyHint: 'Half of the interval that holds it with 95 %; it enters the ± of the readings.',
   accuracyTooSmall: 'It cannot be below zero.',
   label: 'changed the count',
 } as const;

@@ -3,6 +3,8 @@ export const scheduleText = {
   title: 'Reading points',
   lead: (datum: string, gammaW: string, unit: string) =>
     `${datum === '' ? 'elevations as typed' : `elevations to ${datum}`}, pressure with γw = ${gammaW} ${unit}`,
+  plusMinus: '± at 95 %',
+  /** What the first engine froze was made of a quarter of a drop and the calibration. */
   provisional: '± provisional',
   unfinished: 'Net unfinished',
   unfinishedRow: 'no figure, net unfinished',

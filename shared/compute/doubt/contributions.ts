@@ -1,13 +1,4 @@
-/** What an error comes from, as the engineer is told. */
-export type DoubtSource =
-  | 'knownPoints'
-  | 'tracing'
-  | 'place'
-  | 'waterLevels'
-  | 'datum'
-  | 'tip'
-  | 'gammaW'
-  | 'permeability';
+import type { DoubtShares, DoubtSource } from '#shared/contract/reading-doubt.ts';
 
 /**
  * What one independent cause adds to the error of a figure: sensitivity times the half-width that holds the cause's
@@ -22,9 +13,6 @@ export type Contribution = {
 
 /** The contributions of all causes to one figure, each cause once. */
 export type Contributions = readonly Contribution[];
-
-/** The part of the variance that a source has; parts add to 1. */
-export type DoubtShare = { readonly source: DoubtSource; readonly part: number };
 
 /**
  * Contributions to a weighted sum of figures, Σ wᵢ·yᵢ: amounts of one cause add with their signs, which is propagation
@@ -53,7 +41,7 @@ export function halfWidth(contributions: Contributions): number {
 }
 
 /** Part of the variance by source, greatest first; empty when there is no doubt at all. */
-export function sharesOf(contributions: Contributions): DoubtShare[] {
+export function sharesOf(contributions: Contributions): DoubtShares {
   const squares = new Map<DoubtSource, number>();
   let all = 0;
   for (const { source, amount } of contributions) {

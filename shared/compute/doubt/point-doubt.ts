@@ -1,7 +1,6 @@
 import {
   type Contribution,
   type Contributions,
-  type DoubtShare,
   halfWidth,
   sharesOf,
   weightedSum,
@@ -9,6 +8,7 @@ import {
 import type { SetOutCause } from '#shared/compute/doubt/place-doubt.ts';
 import type { SheetPx } from '#shared/compute/frames.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
+import type { DoubtShares } from '#shared/contract/reading-doubt.ts';
 
 /** A head that a figure hangs on and that is itself read off the drawing or typed. */
 export type EndHead = {
@@ -22,8 +22,7 @@ export type EndHead = {
 export type NetDoubt = {
   readonly setOut: readonly SetOutCause[];
   readonly water: EntityOf<'waterLevels'>;
-  /** Half-width (95 %) of a traced place, pixels and the length unit. */
-  readonly tracingPx: number;
+  /** Half-width (95 %) of a traced place, length unit. */
   readonly tracing: number;
   readonly headwater: EndHead;
   readonly outlet: EndHead;
@@ -32,7 +31,10 @@ export type NetDoubt = {
 /** One reading, as far as its doubt goes. Heads in the length unit, gradient natural. */
 export type DoubtfulReading = {
   readonly id: string;
+  /** Base-raster pixels. */
   readonly at: SheetPx;
+  /** True on a face of free outflow, where the head is the elevation and the pressure nil by definition. */
+  readonly onFreeFace: boolean;
   /** True for a place typed in section coordinates. */
   readonly typed: boolean;
   readonly elevationPlusMinus: number | null;
@@ -61,6 +63,7 @@ export type ReadingDoubt = {
  * h − z. u = γw(h − z) adds (h − z)·U(γw). Heads in the length unit, pressures in γw's unit times it.
  */
 export function readingDoubt(reading: DoubtfulReading, net: NetDoubt): ReadingDoubt {
+  if (reading.onFreeFace) return onFreeFace(reading, net);
   const levels = endHeads(reading.partLost, net);
   const lines = lineContributions(reading, net);
   const place = reading.typed ? typedPlace(reading, net) : clickedPlace(reading, net);
@@ -88,13 +91,27 @@ export function readingDoubt(reading: DoubtfulReading, net: NetDoubt): ReadingDo
   };
 }
 
+function onFreeFace(reading: DoubtfulReading, net: NetDoubt): ReadingDoubt {
+  const place = reading.typed ? typedPlace(reading, net) : clickedPlace(reading, net);
+  const datum = given('datum', 'datum', net.water.datumPlusMinus);
+  return { totalHead: [...place.elevation, ...datum], pressureHead: [], porePressure: [] };
+}
+
+/** Contributions to the head lost from the headwater to the outlet. */
+export function headLostDoubt(net: NetDoubt): Contributions {
+  return weightedSum([
+    [1, endHead(net.headwater, net)],
+    [-1, endHead(net.outlet, net)],
+  ]);
+}
+
 /** Half-widths and shares of a reading's three figures, for the schedule. */
 export function plusMinusOf(doubt: ReadingDoubt): {
   totalHead: number;
   pressureHead: number;
   porePressure: number;
-  headShares: DoubtShare[];
-  pressureShares: DoubtShare[];
+  headShares: DoubtShares;
+  pressureShares: DoubtShares;
 } {
   return {
     totalHead: halfWidth(doubt.totalHead),

@@ -1,9 +1,6 @@
-import {
-  type Contribution,
-  type DoubtShare,
-  halfWidth,
-  sharesOf,
-} from '#shared/compute/doubt/contributions.ts';
+import { type Contribution, halfWidth, sharesOf } from '#shared/compute/doubt/contributions.ts';
+
+import type { DoubtShares } from '#shared/contract/reading-doubt.ts';
 
 /** What the seepage hangs on besides the counts; half-widths at 95 %. */
 export type SeepageDoubtInputs = {
@@ -17,7 +14,7 @@ export type SeepageDoubtInputs = {
 };
 
 /** Seepage is known within ×/÷ `factor`; null while k has no factor. `shares` are parts of the variance of ln q. */
-export type SeepageDoubt = { readonly factor: number | null; readonly shares: readonly DoubtShare[] };
+export type SeepageDoubt = { readonly factor: number | null; readonly shares: DoubtShares };
 
 /**
  * The factor within which q = k·H·Nf/Nd·(B/L) is known at 95 %, propagated in logarithms: ln f = √(ln²f(k) + ln²(1 +

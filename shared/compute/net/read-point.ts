@@ -1,8 +1,8 @@
+import { plusMinusOf, readingDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
 import { type LieOfPlace, lieOf } from '#shared/compute/net/lie-of-place.ts';
 import { questionReading } from '#shared/compute/net/point-findings.ts';
 import { explainFreeFace, explainReading } from '#shared/compute/net/point-words.ts';
-import { provisionalDoubt } from '#shared/compute/net/provisional-doubt.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
 import { type FieldAt, fieldAt, type HandAt, handAt } from '#shared/compute/net/two-readings.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
@@ -50,8 +50,10 @@ export function withholdPoint(point: PlacedPoint, code: string, text: string): P
     totalHead: null,
     totalHeadPlusMinus: null,
     pressureHead: null,
+    pressureHeadPlusMinus: null,
     porePressure: null,
     porePressurePlusMinus: null,
+    doubt: null,
     byHand: null,
     byField: null,
     explanation: text,
@@ -99,13 +101,8 @@ function withFigures(read: TwiceRead, ground: ReadingGround): PointReading {
   const { before, after, onFreeFace } = lie;
   const { totalHead, dropsLost } = field ?? hand;
   const pressureHead = totalHead - elevation;
-  const doubt = provisionalDoubt({
-    intervalHead: hand.headAfter - hand.headBefore,
-    intervalLength: (hand.way.toBefore + hand.way.toAfter) * ground.map.unitsPerPx,
-    placeDoubt: ground.placeDoubt,
-    clicked: point.value.place.on === 'sheet',
-  });
-  const figures = [totalHead, dropsLost, hand.totalHead, hand.dropsLost, pressureHead, doubt.head]
+  const doubt = doubtOf(read, totalHead, pressureHead, ground);
+  const figures = [totalHead, dropsLost, hand.totalHead, hand.dropsLost, pressureHead, doubt.totalHead]
     .concat(doubt.pressureHead, field?.gradient ?? [])
     .map((figure) => figure * Math.max(1, ground.gammaW));
   if (!figures.every((figure) => Number.isFinite(figure))) {
@@ -122,10 +119,12 @@ function withFigures(read: TwiceRead, ground: ReadingGround): PointReading {
     dropsLost,
     between: { before: before.id, after: after.id, fraction: hand.way.fraction },
     totalHead,
-    totalHeadPlusMinus: doubt.head,
+    totalHeadPlusMinus: doubt.totalHead,
     pressureHead,
+    pressureHeadPlusMinus: doubt.pressureHead,
     porePressure: ground.gammaW * pressureHead,
-    porePressurePlusMinus: ground.gammaW * doubt.pressureHead,
+    porePressurePlusMinus: doubt.porePressure,
+    doubt: { totalHead: doubt.headShares, porePressure: doubt.pressureShares },
     byHand: { totalHead: hand.totalHead, dropsLost: hand.dropsLost },
     byField: field && { ...field, gradient: [field.gradient[0], field.gradient[1]] },
     explanation: onFreeFace
@@ -133,6 +132,30 @@ function withFigures(read: TwiceRead, ground: ReadingGround): PointReading {
       : explainReading(before, after, hand, field, ground),
     findings: questionReading(point.id, sheetAt, hand, field, pressureHead, ground),
   };
+}
+
+/** Without a field the gradient is only known in its size, by hand's rule. */
+function doubtOf(read: TwiceRead, totalHead: number, pressureHead: number, ground: ReadingGround) {
+  const { point, sheetAt, lie, hand, field } = read;
+  const { headwater, outHead } = ground.heads;
+  const lost = (headwater ?? 0) - (outHead ?? 0);
+  const length = (hand.way.toBefore + hand.way.toAfter) * ground.map.unitsPerPx;
+  const slope = length > 0 ? Math.abs(hand.headAfter - hand.headBefore) / length : 0;
+  const doubt = readingDoubt(
+    {
+      id: point.id,
+      at: sheetPx(...ground.toSheet(sheetAt)),
+      typed: point.value.place.on === 'section',
+      onFreeFace: lie.onFreeFace,
+      elevationPlusMinus: point.value.elevationPlusMinus,
+      partLost: lost > 0 ? ((headwater ?? 0) - totalHead) / lost : 0,
+      gradient: field?.gradient ?? [slope, 0],
+      between: { before: lie.before.id, after: lie.after.id, fraction: hand.way.fraction },
+      pressureHead,
+    },
+    ground.doubt,
+  );
+  return plusMinusOf(doubt);
 }
 
 function abovePhreatic(point: PlacedPoint): PointReading {

@@ -1,9 +1,13 @@
+import type { NetDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import type { FieldOfStrip } from '#shared/compute/field/strip-fields.ts';
+import type { SheetPx } from '#shared/compute/frames.ts';
 import type { Ring } from '#shared/compute/geometry/polygon.ts';
 import type { Polyline } from '#shared/compute/geometry/polyline.ts';
+import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import type { NetHeads } from '#shared/compute/net/net-heads.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
+import type { Tensor } from '#shared/compute/soils/soil-list.ts';
 
 /** Everything a place is read against; shapes and `slack` in working pixels. */
 export type ReadingGround = {
@@ -20,6 +24,8 @@ export type ReadingGround = {
   readonly freeFaces: readonly Polyline[];
   /** Lines between soils, along which the field may bend. */
   readonly soilBoundaries: readonly Polyline[];
+  /** Permeability in working pixels up to one factor; null where it is one for all places and directions. */
+  readonly tensorAt: ((x: number, y: number) => Tensor) | null;
   /** The head between the two lines of a strip, solved the first time it is asked for. */
   readonly fieldOf: FieldOfStrip;
   readonly slack: number;
@@ -27,6 +33,9 @@ export type ReadingGround = {
   readonly gammaW: number;
   /** Unit of a head or elevation with its datum, for words: "m LD". */
   readonly levelUnit: string;
-  readonly placeDoubt: number;
+  /** What all readings have in common as to their doubt. */
+  readonly doubt: NetDoubt;
+  /** Working pixels to pixels of the sheet. */
+  readonly toSheet: (place: SheetPx) => Pair;
   readonly unequal: boolean;
 };

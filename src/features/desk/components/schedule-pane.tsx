@@ -69,6 +69,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '' }: Sched
             onEdit={readOnly ? null : edit}
             selectedIds={selectedIds}
             onSelect={select}
+            onMeasured={readOnly ? undefined : (id) => store.emitIntent({ type: 'openMeasured', id })}
           />
         </div>
       ) : null}
@@ -81,7 +82,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '' }: Sched
 }
 
 function leadOf(document: FlowNetDocument, reading: NetReading | null, stale: boolean): string {
-  const parts = [scheduleLead(document, reading), text.provisional];
+  const parts = [scheduleLead(document, reading), text.plusMinus];
   return (stale ? [...parts, text.workingOut] : parts).join(', ');
 }
 

@@ -22,7 +22,7 @@ export function scheduleTsv(
 
 function withDoubtHeads(heads: string[]): string[] {
   const [point = '', offset = '', elevation = '', drops = '', total = '', head = '', pressure = ''] = heads;
-  return [point, offset, elevation, drops, total, '± provisional', head, pressure, '± provisional', 'Remark'];
+  return [point, offset, elevation, drops, total, '± at 95 %', head, pressure, '± at 95 %', 'Remark'];
 }
 
 function rowOf(point: PointReading, document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>): string[] {
