@@ -52,6 +52,8 @@ export function useMargin(
                 ? { form: 'setOut', placedId: intent.id }
                 : { form: 'setOut' },
             );
+          case 'openMeasured':
+            return form({ form: 'measured', pointId: intent.id });
           case 'openLine':
             return form({ form: 'line', lineId: intent.id });
           case 'openWaterLevels':

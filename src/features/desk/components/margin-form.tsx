@@ -8,6 +8,7 @@ import type { DeskFormProps } from './desk-form.ts';
 import { FindingsPane } from './findings-pane.tsx';
 import { LineForm } from './line-form.tsx';
 import { LoadCasePane } from './load-case-pane.tsx';
+import { MeasuredForm } from './measured-form.tsx';
 import { PermeabilityForm } from './permeability-form.tsx';
 import { PointForm } from './point-form.tsx';
 import { SetOutForm } from './set-out-form.tsx';
@@ -20,7 +21,8 @@ export type MarginForm =
   /** `placedId`: the known point just placed, whose offset is typed next. */
   | { form: 'setOut'; placedId?: string }
   | { form: 'line'; lineId: string }
-  | { form: 'soil'; soilId: string };
+  | { form: 'soil'; soilId: string }
+  | { form: 'measured'; pointId: string };
 
 interface MarginFormProps {
   open: MarginForm;
@@ -94,6 +96,8 @@ export function MarginFormPane({ open, store, detail, flush, onOpen, onClose, on
       return <CountForm {...form} />;
     case 'point':
       return <PointForm {...form} newId={store.newId} />;
+    case 'measured':
+      return <MeasuredForm {...form} key={open.pointId} pointId={open.pointId} />;
     case 'line':
       return <LineForm {...form} key={open.lineId} lineId={open.lineId} />;
     case 'findings':

@@ -1,8 +1,11 @@
 import { classNames } from '#client/components/class-names.ts';
+import { measuredText } from '#client/text/measured.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
+import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
+import { MEASURED_COLOURS, measuredFigures, measuredState } from './measured-words.ts';
 import { type Edit, renamePoint, typePlace } from './schedule-edits.ts';
 import { pointFigures, pointRemark } from './schedule-rows.ts';
 import { TableNumber, TableText } from './table-inputs.tsx';
@@ -13,6 +16,8 @@ const CELL = 'border-b border-rule-2 px-2 py-[3px]';
 interface RowProps {
   point: PointReading;
   document: FlowNetDocument;
+  /** What was measured here, null when nothing was; undefined where the table has no such columns. */
+  measured: MeasuredReading | null | undefined;
   /** The reason is said once above the table, not in every row. */
   unfinished: boolean;
   onEdit: ((edit: Edit) => void) | null;
@@ -26,6 +31,7 @@ interface RowProps {
 export function ScheduleRow({
   point,
   document,
+  measured,
   unfinished,
   onEdit,
   selected,
@@ -54,6 +60,7 @@ export function ScheduleRow({
       </th>
       <PlaceCells point={point} document={document} onEdit={onEdit} name={name} />
       <FigureCells point={point} document={document} unfinished={unfinished} />
+      {measured === undefined ? null : <MeasuredCells measured={measured} document={document} />}
       <td className={classNames(CELL, 'w-px text-right whitespace-nowrap')}>
         <button
           type="button"
@@ -172,6 +179,30 @@ function FigureCells({ point, document, unfinished }: Pick<RowProps, 'point' | '
         <b className="font-semibold">{figures.porePressure}</b>
         <span className="text-ink-2">{figures.porePressurePlusMinus}</span>
         {point.findings.length > 0 ? <span className="text-attention"> ?</span> : null}
+      </td>
+    </>
+  );
+}
+
+function MeasuredCells({
+  measured,
+  document,
+}: {
+  measured: MeasuredReading | null;
+  document: FlowNetDocument;
+}) {
+  if (measured === null) return <td colSpan={2} className={CELL} />;
+  const figures = measuredFigures(measured, document.unitSystem);
+  const state = measuredState(measured);
+  return (
+    <>
+      <td className={classNames(CELL, 'text-right whitespace-nowrap')}>
+        {figures.head}
+        <span className="text-ink-2">{figures.headPlusMinus}</span>
+      </td>
+      <td className={classNames(CELL, 'text-right whitespace-nowrap', MEASURED_COLOURS[state])}>
+        {state === 'wet' ? measuredText.wetShort : figures.difference}
+        <span className="font-normal text-ink-2">{figures.differencePlusMinus}</span>
       </td>
     </>
   );

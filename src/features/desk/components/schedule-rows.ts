@@ -1,6 +1,8 @@
+import { measuredText } from '#client/text/measured.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading, PointReading } from '#shared/contract/reading.ts';
+import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
 import { fixedText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
@@ -12,7 +14,9 @@ export type SortColumn =
   | 'dropsLost'
   | 'totalHead'
   | 'pressureHead'
-  | 'porePressure';
+  | 'porePressure'
+  | 'measured'
+  | 'difference';
 export interface Sort {
   column: SortColumn;
   descending: boolean;
@@ -22,14 +26,29 @@ export const ENTERED_ORDER: Sort = { column: 'order', descending: false };
 const byName = new Intl.Collator('en-GB', { numeric: true });
 
 /** Points in the order asked for; those without a figure in that column come last either way. */
-export function sortedPoints(points: readonly PointReading[], sort: Sort): PointReading[] {
+export function sortedPoints(
+  points: readonly PointReading[],
+  sort: Sort,
+  measured: readonly MeasuredReading[] = [],
+): PointReading[] {
   const sign = sort.descending ? -1 : 1;
+  const figure = figureIn(sort.column, measured);
   return [...points].sort((a, b) => {
     if (sort.column === 'name') return sign * byName.compare(a.name, b.name) || a.order - b.order;
-    const [left, right] = [a[sort.column], b[sort.column]];
+    const [left, right] = [figure(a), figure(b)];
     if (left === null || right === null) return Number(left === null) - Number(right === null);
     return sign * (left - right) || a.order - b.order;
   });
+}
+
+function figureIn(
+  column: SortColumn,
+  measured: readonly MeasuredReading[],
+): (point: PointReading) => number | null {
+  if (column === 'name') return (point) => point.order;
+  if (column !== 'measured' && column !== 'difference') return (point) => point[column];
+  const found = new Map(measured.map((each) => [each.id, each]));
+  return ({ id }) => found.get(id)?.[column === 'measured' ? 'head' : 'difference'] ?? null;
 }
 
 /** The order after a press on a column's head: ascending, descending, back to the order they were entered in. */
@@ -45,8 +64,8 @@ export interface ScheduleColumn {
   label: string;
 }
 
-/** Columns with the units in their heads. */
-export function scheduleColumns({ unitSystem, datum }: Units): ScheduleColumn[] {
+/** Columns with the units in their heads; those of measured values where there are any. */
+export function scheduleColumns({ unitSystem, datum }: Units, withMeasured = false): ScheduleColumn[] {
   const { length, pressure } = unitNames(unitSystem);
   const level = elevationUnit(unitSystem, datum);
   const { head } = text;
@@ -58,6 +77,12 @@ export function scheduleColumns({ unitSystem, datum }: Units): ScheduleColumn[] 
     { column: 'totalHead', label: head.totalHead(level) },
     { column: 'pressureHead', label: head.pressureHead(length) },
     { column: 'porePressure', label: head.pressure(pressure) },
+    ...(withMeasured
+      ? ([
+          { column: 'measured', label: measuredText.column(level) },
+          { column: 'difference', label: measuredText.difference(length) },
+        ] as const)
+      : []),
   ];
 }
 

@@ -1,5 +1,6 @@
 import { Fragment, useState } from 'react';
 import { classNames } from '#client/components/class-names.ts';
+import { measuredText } from '#client/text/measured.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading, PointReading } from '#shared/contract/reading.ts';
@@ -24,12 +25,24 @@ interface ScheduleProps {
   onEdit: ((edit: Edit) => void) | null;
   selectedIds: readonly string[];
   onSelect: ((id: string) => void) | null;
+  /** Opens the form of what was measured at a point; left out where nothing may be typed. */
+  onMeasured?: ((id: string) => void) | undefined;
 }
 
 /** The table of reading points: sorted by its heads, edited where it stands, each row with its count in words. */
-export function Schedule({ document, reading, sort, onSort, onEdit, selectedIds, onSelect }: ScheduleProps) {
+export function Schedule({
+  document,
+  reading,
+  sort,
+  onSort,
+  onEdit,
+  selectedIds,
+  onSelect,
+  onMeasured,
+}: ScheduleProps) {
   const [openId, setOpenId] = useState<string | null>(null);
-  const columns = scheduleColumns(document);
+  const { measured } = reading;
+  const columns = scheduleColumns(document, measured.length > 0);
   return (
     <table className="w-full min-w-[700px]">
       <caption className="sr-only">{text.title}</caption>
@@ -44,11 +57,14 @@ export function Schedule({ document, reading, sort, onSort, onEdit, selectedIds,
         </tr>
       </thead>
       <tbody>
-        {sortedPoints(reading.points, sort).map((point) => (
+        {sortedPoints(reading.points, sort, measured).map((point) => (
           <Fragment key={point.id}>
             <ScheduleRow
               point={point}
               document={document}
+              measured={
+                measured.length > 0 ? (measured.find(({ id }) => id === point.id) ?? null) : undefined
+              }
               unfinished={reading.state === 'unfinished'}
               onEdit={onEdit}
               selected={selectedIds.includes(point.id)}
@@ -57,7 +73,13 @@ export function Schedule({ document, reading, sort, onSort, onEdit, selectedIds,
               onToggle={() => setOpenId(openId === point.id ? null : point.id)}
             />
             {openId === point.id ? (
-              <Explanation point={point} onEdit={onEdit} span={columns.length + 1} />
+              <Explanation
+                point={point}
+                onEdit={onEdit}
+                onMeasured={onMeasured}
+                hasMeasured={measured.some(({ id }) => id === point.id)}
+                span={columns.length + 1}
+              />
             ) : null}
           </Fragment>
         ))}
@@ -103,10 +125,14 @@ function Head({
 function Explanation({
   point,
   onEdit,
+  onMeasured,
+  hasMeasured,
   span,
 }: {
   point: PointReading;
   onEdit: ScheduleProps['onEdit'];
+  onMeasured: ScheduleProps['onMeasured'];
+  hasMeasured: boolean;
   span: number;
 }) {
   const remark = pointRemark(point);
@@ -116,6 +142,15 @@ function Explanation({
         {point.explanation ? <p className="m-0 max-w-[80ch]">{point.explanation}</p> : null}
         {remark && remark !== point.explanation ? (
           <p className="m-0 max-w-[80ch] text-attention">{remark}</p>
+        ) : null}
+        {onMeasured ? (
+          <button
+            type="button"
+            className="touch mt-1 mr-4 text-sm text-ink-2 underline"
+            onClick={() => onMeasured(point.id)}
+          >
+            {hasMeasured ? measuredText.change : measuredText.open}
+          </button>
         ) : null}
         {onEdit ? (
           <button

@@ -6,5 +6,6 @@ export type DeskIntent =
   | { type: 'openNote'; noteId: string }
   | { type: 'openKnownPoint'; id: string }
   | { type: 'openReadingPoint'; id: string }
+  | { type: 'openMeasured'; id: string }
   | { type: 'openLine'; id: string }
   | { type: 'openWaterLevels' };

@@ -92,7 +92,9 @@ function chosenLine(context: ToolContext): { id: string; line: TracedLine } | nu
 
 /** Removes the chosen vertex, or when none is chosen all that is. A line keeps two points at least. */
 function removeSelected(context: ToolContext): ToolStep {
-  if (context.readOnly || context.selection.kind === 'none') return rest();
+  // A soil is no mark on the sheet: it is removed in its form, with what refers to it.
+  if (context.readOnly || context.selection.kind === 'none' || context.selection.kind === 'soil')
+    return rest();
   const chosen = chosenLine(context);
   const vertex = context.selection.vertex;
   if (chosen !== null && vertex !== null && chosen.line.points.length > 2) {
