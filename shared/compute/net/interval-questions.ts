@@ -1,5 +1,5 @@
 import type { NetCells } from '#shared/compute/cells/cells.ts';
-import type { CellFacts } from '#shared/compute/cells/common-ratio.ts';
+import { type CellFacts, commonRatioOf } from '#shared/compute/cells/common-ratio.ts';
 import { type PartDrop, partsOfLast } from '#shared/compute/cells/last-part.ts';
 import { type MissingLine, spacingOf } from '#shared/compute/cells/spacing.ts';
 import { makeFinding } from '#shared/compute/findings.ts';
@@ -41,12 +41,12 @@ export function questionIntervals(inputs: IntervalInputs): IntervalQuestions {
   // Without flow lines whole strips are compared, which carry one flow only where none leaves on the way.
   const missing =
     cells.cells.length === 0 && heads.several ? [] : spacingOf(model, cells, enteredRatio, facts);
-  const parts = partsOfLast(
-    cells.cells,
-    enteredRatio,
-    { ...facts, dropsBetween: wholeLast(facts, model) },
-    accuracyPx,
-  );
+  // Cells of another ratio than the entered one are asked about by themselves, and are the measure for no part.
+  const hasMeasure = commonRatioOf(cells.cells, enteredRatio, facts).agrees;
+  const plain = { ...facts, dropsBetween: wholeLast(facts, model) };
+  const parts = hasMeasure
+    ? partsOfLast(cells.cells, enteredRatio, plain, accuracyPx)
+    : { drops: [], channels: [] };
   const wide = missing
     .filter(({ kind, between }) => kind === 'equipotential' && between.length === 2)
     .map(({ between }) => [between[0]!, between[1]!] as const);

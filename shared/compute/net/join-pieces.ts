@@ -45,6 +45,61 @@ export function joinPieces(
   return { whole, findings };
 }
 
+/** Each of two facing ends would run on to the other within this many degrees. */
+const FACING_DEG = 30;
+
+/**
+ * Pieces of what looks like one equipotential with a gap between them, no longer than the shorter piece: their ends face
+ * one another, away from every boundary. `inDoubt`: lines that found no place in the order; a gap beside one of them withholds the figures. Shapes and
+ * `reach` in working pixels.
+ */
+export function offerToJoin(
+  whole: readonly WholeLine[],
+  boundaries: readonly Polyline[],
+  reach: number,
+  inDoubt: ReadonlySet<string>,
+): Finding[] {
+  const isFree = ({ at }: Tip) =>
+    !boundaries.some((shape) => nearestOnPolyline(shape, ...at).distance <= reach);
+  return whole.flatMap((a, i) =>
+    whole.slice(i + 1).flatMap((b): Finding[] => {
+      const most = Math.min(lengthOf(a.line.shape), lengthOf(b.line.shape));
+      const facing = tipsOf(a.line.shape).find((tip) =>
+        tipsOf(b.line.shape).some((other) => face(tip, other, most) && isFree(tip) && isFree(other)),
+      );
+      if (facing === undefined) return [];
+      const ids = [a.line.id, b.line.id];
+      return [
+        offer(
+          ids,
+          facing.at,
+          ids.some((id) => inDoubt.has(id)),
+        ),
+      ];
+    }),
+  );
+}
+
+/** True when each of two ends would run on to the other. */
+function face(a: Tip, b: Tip, most: number): boolean {
+  const gap: Pair = [b.at[0] - a.at[0], b.at[1] - a.at[1]];
+  const size = Math.hypot(...gap);
+  if (!(size > 0) || size > most) return false;
+  const least = size * Math.cos((FACING_DEG * Math.PI) / 180);
+  const along = a.onward[0] * gap[0] + a.onward[1] * gap[1];
+  const against = -(b.onward[0] * gap[0] + b.onward[1] * gap[1]);
+  return along >= least && against >= least;
+}
+
+function offer(ids: readonly string[], at: Pair, withholds: boolean): Finding {
+  return makeFinding(
+    withholds ? 'wrong' : 'question',
+    'lineInPieces',
+    'Two equipotentials look like the pieces of one with a gap here. Extend one to the end of the other, and they are read as one line.',
+    { cell: 'netCheck', entityIds: ids, at },
+  );
+}
+
 type Tip = { readonly at: Pair; readonly onward: Pair; readonly isFirst: boolean };
 
 function joinedPair(

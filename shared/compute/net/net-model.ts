@@ -3,7 +3,7 @@ import type { Polyline } from '#shared/compute/geometry/polyline.ts';
 import { type CarrierGraph, carrierGraph } from '#shared/compute/net/carrier-graph.ts';
 import { type Carrier, carryToFeet, type FootedLine } from '#shared/compute/net/feet.ts';
 import { joinBoundaries } from '#shared/compute/net/join-boundaries.ts';
-import { joinPieces } from '#shared/compute/net/join-pieces.ts';
+import { joinPieces, offerToJoin } from '#shared/compute/net/join-pieces.ts';
 import { findLeavingLines } from '#shared/compute/net/leaving-lines.ts';
 import { type HeadLine, neighbourLinks } from '#shared/compute/net/neighbours.ts';
 import { checkLines } from '#shared/compute/net/net-checks.ts';
@@ -94,6 +94,7 @@ export function modelNet(
       // While a boundary is still to be marked, neither the order nor an open end says anything.
       ...(findings.length === 0
         ? [
+            ...offerToJoin(whole, edges, reach, new Set([...order.unordered, ...order.sideBySide])),
             ...orderFindings(order, equipotentials, potentials),
             ...questionOpenEnds(equipotentials, lines, reach),
           ]
