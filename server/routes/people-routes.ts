@@ -4,13 +4,15 @@ import { AppError } from '#server/errors/app-error.ts';
 import { defineRoute, type RouteRecord } from '#server/http/route-record.ts';
 import { startSession } from '#server/http/sign-in-strategy.ts';
 import { maySendReset, throttled } from '#server/http/sign-in-throttle.ts';
+import { listEvents } from '#server/services/event-queries.ts';
 import { createInvitationService } from '#server/services/invitation-service.ts';
 import { createPasswordResetService } from '#server/services/password-reset-service.ts';
 import { createPersonService, listPeople } from '#server/services/person-service.ts';
 import { findByPassword } from '#server/services/person-sign-in.ts';
 import { toPersonDto } from '#server/services/person-state.ts';
 import { inTransaction, readingDeps } from '#server/services/service-deps.ts';
-import { id } from '#shared/contract/common.ts';
+import { id, pageOf, pageQuery } from '#shared/contract/common.ts';
+import { eventDto } from '#shared/contract/dams.ts';
 import {
   invitationAcceptInput,
   invitationDto,
@@ -119,6 +121,14 @@ const managingRoutes: RouteRecord[] = [
     access: managing,
     reply: personListDto,
     handle: async ({ deps }) => ({ items: (await listPeople(readingDeps(deps))).map(toPersonDto) }),
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/events',
+    access: managing,
+    query: pageQuery,
+    reply: pageOf(eventDto),
+    handle: ({ deps, query }) => listEvents(deps.db.manager, null, query.cursor),
   }),
   defineRoute({
     method: 'post',

@@ -20,14 +20,14 @@ const READ_AT_ONCE = 500;
 
 async function readBefore(
   manager: EntityManager,
-  damId: string,
+  damId: string | null,
   before: Position | null,
 ): Promise<EventRow[]> {
   return manager.query(
     `SELECT e.id, e.type, e.text, e.person_id, p.name AS person_name, e.drawing_id, e.net_id, e.at,
         ${positionTime('e.at')} AS position
       FROM event e LEFT JOIN person p ON p.id = e.person_id
-      WHERE e.dam_id = $1 AND ($2::timestamptz IS NULL OR (e.at, e.id) < ($2::timestamptz, $3::uuid))
+      WHERE ${damId === null ? '$1::uuid IS NULL AND e.dam_id IS NULL' : 'e.dam_id = $1'} AND ($2::timestamptz IS NULL OR (e.at, e.id) < ($2::timestamptz, $3::uuid))
       ORDER BY e.at DESC, e.id DESC LIMIT ${READ_AT_ONCE}`,
     [damId, before?.at ?? null, before?.id ?? null],
   );
@@ -50,10 +50,10 @@ const toDto = (row: EventRow): EventDto => ({
   at: row.at.toISOString(),
 });
 
-/** What happened on a dam, newest first, runs of the same work as one line. */
+/** What happened on a dam, or with `null` apart from every dam, newest first, runs of the same work as one line. */
 export async function listEvents(
   manager: EntityManager,
-  damId: string,
+  damId: string | null,
   cursor: string | undefined,
 ): Promise<{ items: EventDto[]; nextCursor: string | null }> {
   const rows = await readBefore(manager, damId, cursor ? fromCursor(cursor) : null);

@@ -9,6 +9,7 @@ const STATES: Record<PersonDto['state'], string> = {
 export const peopleText = {
   title: 'People',
   lead: 'Everybody with an account here. Parts on a dam are given on the dam.',
+  activity: 'Accounts and invitations',
   caption: 'People of this installation',
   person: 'Person',
   state: 'State',

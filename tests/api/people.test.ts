@@ -1,9 +1,10 @@
+import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { PersonEntity, PersonTokenEntity } from '#server/entities/person-entity.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { mailsTo, tokenMailedTo } from '#tests/support/mail-links.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
-import { addPerson, type TestPerson } from '#tests/support/test-people.ts';
+import { addDam, addPerson, type TestPerson } from '#tests/support/test-people.ts';
 
 let app: TestApp;
 let admin: Caller;
@@ -27,6 +28,29 @@ const stranger = async () => {
   return caller;
 };
 const NEW_PASSWORD = 'another long password';
+
+describe('what happens apart from every dam', () => {
+  it('is listed, newest first, to admins only', async () => {
+    const email = 'ivo.marsh@harrow-fen.example';
+    later(1);
+    await admin.post('/people/invitations', { email, admin: false }).expect(201);
+    await app.db.query('INSERT INTO event (id, dam_id, type, text) VALUES ($1, $2, $3, $4)', [
+      uuidv7(),
+      await addDam(app.db, ada.id),
+      'dam.created',
+      'made a dam',
+    ]);
+    const { items } = (await admin.get('/events').expect(200)).body;
+    expect(items[0]).toMatchObject({ person: { name: ada.name }, drawingId: null, netId: null });
+    expect(items[0].text).toContain(email);
+    const rows = await app.db.query('SELECT id FROM event WHERE dam_id IS NOT NULL');
+    expect(rows.length).toBeGreaterThan(0);
+    const ids = items.map((item: { id: string }) => item.id);
+    for (const { id } of rows) expect(ids).not.toContain(id);
+    const member = await app.signIn('Nora Fell');
+    await member.caller.get('/events').expect(403);
+  });
+});
 
 describe('an invitation', () => {
   it('is mailed, looked up, accepted once, and signs the person in', async () => {

@@ -3,6 +3,7 @@ import { useParams } from 'react-router-dom';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { Part } from '#client/components/part.tsx';
+import { damActivityQuery } from '#client/features/activity/api/activity-queries.ts';
 import { ActivityTable } from '#client/features/activity/components/activity-list.tsx';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
 import { paths } from '#client/lib/paths.ts';
@@ -22,7 +23,7 @@ export function DamActivityPage() {
       <Page title={text.activityOf(dam.name)} heading={text.activity} lead={dam.name}>
         <Panel title={text.activity} look="register">
           <Part>
-            <ActivityTable damId={dam.id} />
+            <ActivityTable of={damActivityQuery(dam.id)} />
           </Part>
         </Panel>
       </Page>

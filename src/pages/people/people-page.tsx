@@ -1,6 +1,8 @@
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { Part } from '#client/components/part.tsx';
+import { peopleActivityQuery } from '#client/features/activity/api/activity-queries.ts';
+import { ActivityTable } from '#client/features/activity/components/activity-list.tsx';
 import { InvitePersonForm } from '#client/features/people/components/invite-person-form.tsx';
 import { PeopleTable } from '#client/features/people/components/people-table.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
@@ -22,6 +24,11 @@ export function PeoplePage() {
             <div className="p-3.5">
               <InvitePersonForm />
             </div>
+          </Panel>
+          <Panel title={text.activity} look="register" className="min-w-0 self-start">
+            <Part>
+              <ActivityTable of={peopleActivityQuery()} />
+            </Part>
           </Panel>
         </div>
       </Page>

@@ -8,14 +8,23 @@ const eventPage = pageOf(eventDto);
 export const activityKeys = {
   root: ['activity'] as const,
   dam: (damId: string) => ['activity', 'dam', damId] as const,
+  /** Under the people's own key, so that it is loaded again with them. */
+  people: ['people', 'activity'] as const,
 };
 
-/** What happened on a dam, newest first, page by page. */
-export const damActivityQuery = (damId: string) =>
+/** What happened, newest first, page by page. */
+const eventsQuery = (path: string, queryKey: readonly string[]) =>
   infiniteQueryOptions({
-    queryKey: activityKeys.dam(damId),
-    queryFn: ({ pageParam, signal }) =>
-      getJson(`/dams/${damId}/events`, eventPage, { query: { cursor: pageParam }, signal }),
+    queryKey,
+    queryFn: ({ pageParam, signal }) => getJson(path, eventPage, { query: { cursor: pageParam }, signal }),
     initialPageParam: undefined as string | undefined,
     getNextPageParam: (page) => page.nextCursor ?? undefined,
   });
+
+export type ActivityQuery = ReturnType<typeof eventsQuery>;
+
+export const damActivityQuery = (damId: string) =>
+  eventsQuery(`/dams/${damId}/events`, activityKeys.dam(damId));
+
+/** What belongs to no dam: accounts, invitations, passwords. For who manages people. */
+export const peopleActivityQuery = () => eventsQuery('/events', activityKeys.people);

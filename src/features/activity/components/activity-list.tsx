@@ -8,7 +8,7 @@ import { shortName } from '#client/lib/initials.ts';
 import { paths } from '#client/lib/paths.ts';
 import { activityText as text } from '#client/text/activity.ts';
 import type { EventDto } from '#shared/contract/dams.ts';
-import { damActivityQuery } from '../api/activity-queries.ts';
+import { type ActivityQuery, damActivityQuery } from '../api/activity-queries.ts';
 
 const SHORT_LENGTH = 6;
 
@@ -46,8 +46,8 @@ export function RecentActivity({ damId }: { damId: string }) {
 }
 
 /** All of it as a table, a page at a time. */
-export function ActivityTable({ damId }: { damId: string }) {
-  const query = useSuspenseInfiniteQuery(damActivityQuery(damId));
+export function ActivityTable({ of }: { of: ActivityQuery }) {
+  const query = useSuspenseInfiniteQuery(of);
   const events = query.data.pages.flatMap((page) => page.items);
   if (events.length === 0) return <Empty>{text.none}</Empty>;
   return (
