@@ -13,10 +13,9 @@ import {
   type StripRails,
 } from '#shared/compute/cells/rails.ts';
 import { CORNER_DEG, chordFor, singularPoints } from '#shared/compute/cells/singular-points.ts';
-import { ringContains, ringOf } from '#shared/compute/geometry/polygon.ts';
-import { firstOf, type Polyline, pieceOf } from '#shared/compute/geometry/polyline.ts';
+import { distanceToRing, ringContains, ringOf } from '#shared/compute/geometry/polygon.ts';
+import { boxesMeet, firstOf, type Polyline, pieceOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
-import { distanceToSegment } from '#shared/compute/geometry/thin.ts';
 import { linesOfKind } from '#shared/compute/net/net-lines.ts';
 import type { Equipotential, NetModel } from '#shared/compute/net/net-model.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
@@ -170,21 +169,23 @@ function reasonAgainst(
   if (holds(rails.brokenBefore, left.sBefore, right.sBefore)) return 'lineEnds';
   if (holds(rails.brokenAfter, left.sAfter, right.sAfter)) return 'lineEnds';
   const near = Math.max(3 * facts.accuracyPx, CORNER_PART * Math.min(measures.length, measures.width));
-  if (facts.singular.some((point) => liesOn(sides, point, near) || liesWithin(sides, point)))
-    return 'singular';
+  if (holdsSingular(sides, facts.singular, near)) return 'singular';
   return hasGroundCorner(sides, left, right, facts) ? 'singular' : null;
 }
 
-function liesOn({ before, after, left, right }: CellSides, point: Pair, near: number): boolean {
-  return [before, after, left, right].some((side) =>
-    side.some((place, i) => i > 0 && distanceToSegment(point, side[i - 1]!, place) <= near),
-  );
-}
-
-/** The tip of a wall traced as one line lies within the cell that goes round it: its two faces are one place. */
-function liesWithin({ before, after, left, right }: CellSides, point: Pair): boolean {
+/**
+ * True when a singular point lies on the outline of a cell, to within `near`, or in it: the tip of a wall traced as one
+ * line lies within the cell that goes round it, since its two faces are one place.
+ */
+function holdsSingular(sides: CellSides, singular: readonly Pair[], near: number): boolean {
+  const { before, after, left, right } = sides;
   const ring = ringOf([...before, ...right, ...[...after].reverse(), ...[...left].reverse()]);
-  return ring !== null && ringContains(ring, ...point);
+  if (ring === null) return false;
+  return singular.some(
+    ([x, y]) =>
+      boxesMeet(ring.box, { minX: x, maxX: x, minY: y, maxY: y }, near) &&
+      (ringContains(ring, x, y) || distanceToRing(ring, x, y) <= near),
+  );
 }
 
 /** True where a potential boundary and a traced boundary along the flow meet at an angle far from a right one. */

@@ -87,7 +87,7 @@ function ratioFinding(check: NetCheckReading): Finding[] {
       'question',
       'cellRatioDiffers',
       `The cells measure B/L ${ratioText(measuredRatio)}, ${ratioText(enteredRatio)} is entered; the seepage counts with the entered one. Check the ratio, the counts or the missing lines.`,
-      { cell: 'seepage' },
+      { cell: 'channels' },
     ),
   ];
 }

@@ -209,7 +209,7 @@ describe('channels and the common ratio', () => {
     const check = checkOfDocument(document);
     expect(check.judgedRatio).toBe(check.measuredRatio);
     expect(poorCells(check)).toEqual([]);
-    expect(questionNetCheck(check, 'SI')).toMatchObject([{ code: 'cellRatioDiffers', cell: 'seepage' }]);
+    expect(questionNetCheck(check, 'SI')).toMatchObject([{ code: 'cellRatioDiffers', cell: 'channels' }]);
   });
 
   it('take rectangles of one ratio for a good net', () => {
