@@ -1,9 +1,12 @@
 import { readFileSync } from 'node:fs';
 import { parseNetFile } from '#server/services/net-file.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import { scheduleCsv } from '#shared/text/schedule-csv.ts';
+import { netCsv } from '#shared/text/net-csv.ts';
 
-/** Reads a net file without server or database: `npm run read-net -- net.json [--csv]`. */
+/**
+ * Reads a net file without server or database: `npm run read-net -- net.json [--csv]`. Prints the readings, the
+ * quantities and the net check; ends with 0, with 1 when the file is no net, with 2 when there is none to read.
+ */
 function main(args: readonly string[]): number {
   const options = args.filter((arg) => arg.startsWith('--'));
   const files = args.filter((arg) => !arg.startsWith('--'));
@@ -24,7 +27,7 @@ function main(args: readonly string[]): number {
   }
   const reading = readNet(parsed.document);
   const out = options.includes('--csv')
-    ? scheduleCsv(parsed.document, reading)
+    ? netCsv(parsed.document, reading)
     : `${JSON.stringify(reading, null, 2)}\n`;
   process.stdout.write(out);
   return 0;

@@ -6,7 +6,8 @@ import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 /**
  * The schedule of reading points as CSV, units in the heads of the columns, figures rounded to a tenth of what the
  * schedule shows. Points in the order of the schedule. Where there is no figure the cell is empty and the remark says
- * why; above the phreatic line the pressure is 0 and the remark says so.
+ * why; above the phreatic line the pressure is 0 and the remark says so. What was measured has columns of its own where
+ * anything was.
  */
 export function scheduleCsv(
   document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
@@ -25,8 +26,23 @@ export function scheduleCsv(
     `Pore pressure, ${units.pressure}`,
     `Pore pressure ± at 95 %, ${units.pressure}`,
     'Remark',
+    ...(reading.measured.length === 0
+      ? []
+      : [
+          `Measured head, ${elevation}`,
+          `Measured head ± at 95 %, ${units.length}`,
+          `Measured − net, ${units.length}`,
+          `Measured − net ± at 95 %, ${units.length}`,
+        ]),
   ];
-  return csvText([head, ...reading.points.map(rowOf)]);
+  const measured = new Map(reading.measured.map((each) => [each.id, each]));
+  const measuredCells = (id: string): CsvCell[] => {
+    if (measured.size === 0) return [];
+    const found = measured.get(id);
+    const { head = null, headPlusMinus = null, difference = null, differencePlusMinus = null } = found ?? {};
+    return [head, headPlusMinus, difference, differencePlusMinus].map((value) => rounded(value, 3));
+  };
+  return csvText([head, ...reading.points.map((point) => [...rowOf(point), ...measuredCells(point.id)])]);
 }
 
 function rowOf(point: PointReading): CsvCell[] {

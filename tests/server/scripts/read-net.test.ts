@@ -4,9 +4,11 @@ import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { readNet } from '#shared/compute/read-net.ts';
+import { netCsv } from '#shared/text/net-csv.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
+import { FIRST_DOCUMENT_TEXT } from '#tests/support/first-version/first-version.ts';
 
 const root = path.resolve(import.meta.dirname, '..', '..', '..');
 const { net, pxPerUnit } = EXACT_NETS[0]!;
@@ -24,19 +26,26 @@ afterAll(() => {
   rmSync(folder, { recursive: true, force: true });
 });
 
+const script = path.join(root, 'server/scripts/read-net.ts');
+
 function run(name: string, content: string | null, ...options: string[]) {
   const file = path.join(folder, name);
   if (content !== null) writeFileSync(file, content);
-  return spawnSync('npm', ['run', '--silent', 'read-net', '--', file, ...options], {
+  return spawnSync(process.execPath, ['--import', 'tsx', script, file, ...options], {
     cwd: root,
     encoding: 'utf8',
   });
 }
 
 describe('npm run read-net', () => {
-  it('asks for a file and says when it cannot be read', () => {
-    expect(run('absent.json', null)).toMatchObject({ status: 2, stdout: '' });
-    expect(run('absent.json', null).stderr).toContain('cannot be read');
+  it('says when there is no such file', () => {
+    const { status, stdout, stderr } = spawnSync(
+      'npm',
+      ['run', '--silent', 'read-net', '--', path.join(folder, 'absent.json')],
+      { cwd: root, encoding: 'utf8' },
+    );
+    expect([status, stdout]).toEqual([2, '']);
+    expect(stderr).toContain('cannot be read');
   });
 
   it('names the line of broken JSON', () => {
@@ -59,6 +68,26 @@ describe('npm run read-net', () => {
     const json = run('net.json', text);
     expect(json.status).toBe(0);
     expect(JSON.parse(json.stdout)).toEqual(JSON.parse(JSON.stringify(reading)));
-    expect(run('net.json', text, '--csv').stdout).toBe(scheduleCsv(document, reading));
+    const csv = run('net.json', text, '--csv').stdout;
+    expect(csv).toBe(netCsv(document, reading));
+    expect(csv.startsWith(scheduleCsv(document, reading))).toBe(true);
+  });
+
+  it('asks for one file and knows no other option', () => {
+    expect(run('net.json', text, '--xml')).toMatchObject({ status: 2, stdout: '' });
+    expect(run('net.json', text, 'second.json').stderr).toContain('Give one net file');
+  });
+
+  it('reads a file of the first version', () => {
+    const { status, stdout } = run('first.json', FIRST_DOCUMENT_TEXT);
+    expect([status, JSON.parse(stdout).state]).toEqual([0, 'read']);
+  });
+
+  it('prints what is missing of a net that is not finished, and no figure', () => {
+    const unfinished = text.replace(/"headwater": [-\d.]+/, '"headwater": null');
+    const { status, stdout } = run('unfinished.json', unfinished);
+    const printed = JSON.parse(stdout);
+    expect([status, printed.state, printed.quantities.headLost]).toEqual([0, 'unfinished', null]);
+    expect(printed.findings.map((found: { weight: string }) => found.weight)).toContain('missing');
   });
 });
