@@ -4,7 +4,12 @@ import {
   type Tensor,
   transformedTensor,
 } from '#shared/compute/independent/conductivity.ts';
-import { type SectionFrame, sectionFrame, toFrame } from '#shared/compute/independent/section-frame.ts';
+import {
+  type SectionFrame,
+  sectionFrame,
+  toFrame,
+  toSection,
+} from '#shared/compute/independent/section-frame.ts';
 import {
   failure,
   type SectionChain,
@@ -14,13 +19,97 @@ import {
 } from '#shared/compute/independent/section-problem.ts';
 import { BOX_VERTICES, constrainedDelaunay } from '#shared/compute/mesh/constrained-delaunay.ts';
 import { type LabelledChain, type NodedSegments, nodeSegments } from '#shared/compute/mesh/node-segments.ts';
-import { FREE, type TriangleMesh } from '#shared/compute/mesh/triangle-mesh.ts';
+import { FREE, nextOf, type TriangleMesh } from '#shared/compute/mesh/triangle-mesh.ts';
 
 /** Region of a triangle outside the section; inside, the region is the number of its soil plus one. */
 export const OUTSIDE = 0;
 
 /** Places nearer than this part of the section's extent are one. */
 const MERGE = 1e-6;
+
+/** A bounded face of the lines of a problem: a place in it, and how long each condition's pieces about it are. */
+export type OutlineFace = { readonly place: Pair; readonly lengths: ReadonlyMap<SectionCondition, number> };
+
+/**
+ * The bounded faces into which the outlines of a problem part the plane, places in section coordinates; and the places
+ * at which an outline ends with nothing joined to it. A failure when the lines are too tangled or a figure is wrong.
+ */
+export function outlineFaces(
+  problem: SectionProblem,
+): { faces: OutlineFace[]; looseEnds: Array<{ at: Pair; condition: SectionCondition }> } | SectionFailure {
+  const lines = linesOf(problem);
+  if ('ok' in lines) return lines;
+  const { frame, mesh, segments } = lines;
+  const { outlines } = roles(mesh, segments);
+  const passes = (e: number) => !outlines.has(e);
+  const seen = new Set(
+    flood(
+      mesh,
+      mesh.around(0).map((e) => Math.floor(e / 3)),
+      passes,
+    ),
+  );
+  const faces: OutlineFace[] = [];
+  for (let t = 0; t < mesh.triangleCount; t += 1) {
+    if (seen.has(t)) continue;
+    const face = flood(mesh, [t], passes);
+    for (const each of face) seen.add(each);
+    faces.push({
+      place: toSection(frame, largestMiddle(mesh, face)),
+      lengths: lengthsAbout(lines, face),
+    });
+  }
+  return { faces, looseEnds: looseEndsOf(lines) };
+}
+
+/** Natural length of the pieces of each condition along some triangles; both sides of a wall inside them count. */
+function lengthsAbout(
+  { frame, mesh, conditions }: SectionOutline,
+  triangles: readonly number[],
+): Map<SectionCondition, number> {
+  const lengths = new Map<SectionCondition, number>();
+  const placeOf = (v: number) => toSection(frame, [mesh.x[v]!, mesh.y[v]!]);
+  for (const t of triangles) {
+    for (let e = 3 * t; e < 3 * t + 3; e += 1) {
+      const condition = conditions[mesh.label[e]!];
+      if (condition === undefined) continue;
+      const [a, b] = [placeOf(mesh.corner[e]!), placeOf(mesh.corner[nextOf(e)]!)];
+      lengths.set(condition, (lengths.get(condition) ?? 0) + Math.hypot(b[0] - a[0], b[1] - a[1]));
+    }
+  }
+  return lengths;
+}
+
+function looseEndsOf({
+  frame,
+  segments,
+  conditions,
+}: SectionOutline): Array<{ at: Pair; condition: SectionCondition }> {
+  const meeting = new Map<number, number>();
+  for (const { from, to } of segments.segments)
+    for (const point of [from, to]) meeting.set(point, (meeting.get(point) ?? 0) + 1);
+  return segments.segments.flatMap(({ from, to, label }) => {
+    const condition = conditions[label];
+    if (condition === undefined) return [];
+    return [from, to]
+      .filter((point) => meeting.get(point) === 1)
+      .map((point) => ({ at: toSection(frame, [segments.x[point]!, segments.y[point]!]), condition }));
+  });
+}
+
+/** Middle of the largest of some triangles. */
+function largestMiddle({ x, y, corner }: TriangleMesh, triangles: readonly number[]): Pair {
+  let best: Pair = [0, 0];
+  let most = Number.NEGATIVE_INFINITY;
+  for (const t of triangles) {
+    const [a, b, c] = [corner[3 * t]!, corner[3 * t + 1]!, corner[3 * t + 2]!];
+    const area = (x[b]! - x[a]!) * (y[c]! - y[a]!) - (y[b]! - y[a]!) * (x[c]! - x[a]!);
+    if (area <= most) continue;
+    most = area;
+    best = [(x[a]! + x[b]! + x[c]!) / 3, (y[a]! + y[b]! + y[c]!) / 3];
+  }
+  return best;
+}
 
 /** A section as a coarse triangulation of its noded outline, not yet refined. */
 export type SectionOutline = {
@@ -37,6 +126,12 @@ const RANK = { head: 0, freeOutflow: 1, closed: 2 } as const;
 
 /** Nodes the lines of a problem, triangulates them and tells inside from outside and soil from soil. */
 export function outlineOf(problem: SectionProblem): SectionOutline | SectionFailure {
+  const lines = linesOf(problem);
+  if ('ok' in lines) return lines;
+  return markRegions(problem, lines) ?? lines;
+}
+
+function linesOf(problem: SectionProblem): SectionOutline | SectionFailure {
   const wrong = wrongFigure(problem);
   if (wrong !== null) return wrong;
   const tensors = problem.soils.map(permeabilityTensor);
@@ -49,8 +144,6 @@ export function outlineOf(problem: SectionProblem): SectionOutline | SectionFail
   const mesh = segments === null ? null : constrainedDelaunay(segments);
   if (segments === null || mesh === null)
     return failure('tangled', 'The lines are too tangled to be parted at their crossings. Trace them anew.');
-  const unmarked = markRegions(problem, frame, mesh, segments);
-  if (unmarked !== null) return unmarked;
   return {
     frame,
     mesh,
@@ -125,19 +218,9 @@ function extentOf(chains: readonly LabelledChain[]): number {
 /** Writes OUTSIDE or the soil into the regions of the triangles; a failure when there is no inside. */
 function markRegions(
   problem: SectionProblem,
-  frame: SectionFrame,
-  mesh: TriangleMesh,
-  { segments }: NodedSegments,
+  { frame, mesh, segments }: SectionOutline,
 ): SectionFailure | null {
-  const outlines = new Map<number, number>();
-  const parting = new Set<number>();
-  for (const { from, to, outlines: times, parts } of segments) {
-    const e = mesh.find(from + BOX_VERTICES, to + BOX_VERTICES);
-    for (const side of [e, mesh.twin[e]!]) {
-      if (times > 0) outlines.set(side, times);
-      if (times > 0 || parts > 0) parting.add(side);
-    }
-  }
+  const { outlines, parting } = roles(mesh, segments);
   const inside = insideTriangles(problem, frame, mesh, outlines);
   if (!inside.includes(1))
     return failure(
@@ -154,6 +237,23 @@ function markRegions(
     }
   });
   return null;
+}
+
+/** How many outlines run along each half-edge, and the half-edges that part soils. */
+function roles(
+  mesh: TriangleMesh,
+  { segments }: NodedSegments,
+): { outlines: Map<number, number>; parting: Set<number> } {
+  const outlines = new Map<number, number>();
+  const parting = new Set<number>();
+  for (const { from, to, outlines: times, parts } of segments) {
+    const e = mesh.find(from + BOX_VERTICES, to + BOX_VERTICES);
+    for (const side of [e, mesh.twin[e]!]) {
+      if (times > 0) outlines.set(side, times);
+      if (times > 0 || parts > 0) parting.add(side);
+    }
+  }
+  return { outlines, parting };
 }
 
 function triangleAt(mesh: TriangleMesh, [x, y]: Pair): number[] {

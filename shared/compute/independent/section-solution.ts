@@ -32,6 +32,7 @@ export type SectionSolution = {
   /** Stream function ψ at the nodes of a mesh of its own with the same elements; null where it has no single value. */
   readonly stream: { readonly mesh: QuadraticMesh; readonly values: Float64Array } | null;
   readonly flow: readonly PieceFlow[];
+  /** Sums of what the pieces of each id take in and let out. */
   readonly inflow: number;
   readonly outflow: number;
   /** Difference of the two in parts of the inflow. */

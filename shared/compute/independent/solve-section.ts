@@ -25,11 +25,7 @@ import {
   sizeField,
 } from '#shared/compute/independent/size-field.ts';
 import { solutionReader } from '#shared/compute/independent/solution-reader.ts';
-import {
-  type StreamField,
-  streamFunction,
-  wholeInflow,
-} from '#shared/compute/independent/stream-function.ts';
+import { type StreamField, streamFunction } from '#shared/compute/independent/stream-function.ts';
 import { refine } from '#shared/compute/mesh/refine.ts';
 
 export type SolveOptions = {
@@ -194,8 +190,8 @@ function solutionOf(
 ): SectionSolution {
   const flow = pieceFlows(headProblem, head);
   const heads = head.values.map((value) => value + outline.frame.origin[1]);
-  const inflow = wholeInflow(head);
-  const outflow = inflow - flow.reduce((sum, piece) => sum + piece.inflow, 0);
+  const inflow = flow.reduce((sum, piece) => sum + Math.max(0, piece.inflow), 0);
+  const outflow = flow.reduce((sum, piece) => sum - Math.min(0, piece.inflow), 0);
   return {
     ok: true,
     frame: outline.frame,

@@ -29,8 +29,8 @@ export function streamFunction(problem: HeadProblem, head: HeadField): StreamFie
   return solution === null ? null : { mesh, values: solution.values };
 }
 
-/** All that flows into the section. */
-export function wholeInflow({ inflow, held }: HeadField): number {
+/** All that flows into the section at single nodes. */
+function wholeInflow({ inflow, held }: HeadField): number {
   let sum = 0;
   held.forEach((value, node) => {
     if (!Number.isNaN(value)) sum += Math.max(0, inflow[node]!);
