@@ -19,7 +19,6 @@ import { modelNet, type NetModel } from '#shared/compute/net/net-model.ts';
 import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, placePoint } from '#shared/compute/net/read-point.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
-import { questionSoils } from '#shared/compute/net/soil-boundaries.ts';
 import { solidBodies } from '#shared/compute/net/solid-bodies.ts';
 import { questionUpstream } from '#shared/compute/net/upstream-side.ts';
 import { checkWaterline } from '#shared/compute/net/waterline.ts';

@@ -18,7 +18,7 @@ import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
 import { type SingleInputs, singleInputs } from '#shared/compute/single-inputs.ts';
-import { findingOnSheet, type WorkingFrame } from '#shared/compute/working-frame.ts';
+import { findingOnSheet, frameReadingOf, type WorkingFrame } from '#shared/compute/working-frame.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { Finding, LineReading, NetReading, PointReading } from '#shared/contract/reading.ts';
 
@@ -68,6 +68,8 @@ function withoutNet(
     points: points.map((point) => withheldBy(point, findings)),
     quantities: quantitiesOf(null, inputs, document.unitSystem).quantities,
     phreatic: null,
+    frame: null,
+    soils: null,
     netCheck: null,
     doubt: NO_QUANTITY_DOUBT,
   };
@@ -97,6 +99,8 @@ function readOnSection(
     }),
     quantities,
     phreatic: phreaticOnSheet(prepared.phreatic, frame),
+    frame: frameReadingOf(frame, map),
+    soils: prepared.soils.reading,
     netCheck: prepared.netCheck,
     doubt: prepared.doubt,
   };

@@ -11,9 +11,10 @@ import {
   scaledBy,
 } from '#shared/compute/linear-map.ts';
 import { type SectionMap, sectionMapOfFit } from '#shared/compute/section-map.ts';
-import type { CommonAnisotropy } from '#shared/compute/soils/anisotropy.ts';
+import { type CommonAnisotropy, NATURAL } from '#shared/compute/soils/anisotropy.ts';
 import type { DocumentEntity, FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
+import type { FrameReading } from '#shared/contract/reading-frame.ts';
 
 /**
  * The frame in which a net is judged and solved: the section as an isotropic one, so that its cells are squares and
@@ -140,4 +141,11 @@ export function findingOnSheet(finding: Finding, frame: WorkingFrame): Finding {
   if (frame.isSheet || finding.at === null) return finding;
   const [x, y] = frame.toSheet(finding.at);
   return { ...finding, at: [x, y] };
+}
+
+/** What is told of the frame, so that a display can show the natural section and the transformed one. */
+export function frameReadingOf(frame: WorkingFrame, sheetMap: SectionMap): FrameReading {
+  const { kind, ratio, factor, dipDeg } = frame;
+  const natural = workingFrameOf(sheetMap, NATURAL);
+  return { kind, ratio, factor, dipDeg, matrix: [...frame.matrix], naturalMatrix: [...natural.matrix] };
 }

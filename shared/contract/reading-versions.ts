@@ -47,6 +47,8 @@ type FirstQuantities =
   | 'gammaW';
 
 const ADDED_TO_READING: Omit<NetReading, FirstReading> = {
+  frame: null,
+  soils: null,
   phreatic: null,
   netCheck: null,
   doubt: { headLost: null, headPerDrop: null, seepageFactor: null, seepageShares: [] },

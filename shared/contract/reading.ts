@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { doubtShares, quantityDoubt } from './reading-doubt.ts';
+import { frameReading, soilsReading } from './reading-frame.ts';
 import { measuredReading } from './reading-measured.ts';
 import { netCheckReading } from './reading-net-check.ts';
 import { phreaticReading } from './reading-phreatic.ts';
@@ -169,6 +170,9 @@ export const netReading = z.object({
     /** The outlets that the flow reaches, the lowest first; none while unfinished. */
     outlets: z.array(outletReading),
   }),
+  /** The section in which the net is judged. */
+  frame: z.nullable(frameReading),
+  soils: z.nullable(soilsReading),
   phreatic: z.nullable(phreaticReading),
   /** The check of the net's own drawing; null without a set-out net. */
   netCheck: z.nullable(netCheckReading),

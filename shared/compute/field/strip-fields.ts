@@ -11,7 +11,7 @@ export type FieldOfStrip = (strip: Strip) => StripField | null;
 /** What the fields of the strips are solved from. */
 export type FieldGround = Pick<
   ReadingGround,
-  'map' | 'heads' | 'walls' | 'freeFaces' | 'soilBoundaries' | 'slack'
+  'map' | 'heads' | 'walls' | 'freeFaces' | 'soilBoundaries' | 'tensorAt' | 'slack'
 >;
 
 /** Solves a strip the first time it is asked for, and keeps it. */
@@ -38,5 +38,10 @@ function solveOn(strip: Strip, ground: FieldGround): StripField | null {
   const headBeside = (x: number, y: number) =>
     ground.heads.byId.get(beside(x, y)?.id ?? '')?.head ?? elevation(x, y);
   const around = { ...ground, freeFaces: [...ground.freeFaces, ...strip.held.map(({ shape }) => shape)] };
-  return solveStrip(strip, { before: headOn(before), after: headOn(after), free: headBeside }, around, null);
+  return solveStrip(
+    strip,
+    { before: headOn(before), after: headOn(after), free: headBeside },
+    around,
+    ground.tensorAt,
+  );
 }

@@ -17,9 +17,14 @@ export function seepagePerRun(
   return (kPerSecond * headLost * channels * cellRatio) / drops;
 }
 
-/** Permeability of the net in its length unit per second; null until entered. */
+/**
+ * Permeability of the net in its length unit per second, √(kh·kv): that of the transformed section in which its cells are
+ * squares. Null until entered. Source: Samsioe (1931); Casagrande (1937); Harr (1962), ch. 1.
+ */
 export function kPerSecondOf(permeability: EntityOf<'permeability'>, system: UnitSystem): number | null {
-  return permeability.k === null ? null : permeabilityPerSecond(permeability.k, permeability.unit, system);
+  const { k, kv, unit } = permeability;
+  if (k === null) return null;
+  return permeabilityPerSecond(kv === null ? k : Math.sqrt(k) * Math.sqrt(kv), unit, system);
 }
 
 /** More figures than this no counted net deserves. */

@@ -1,4 +1,4 @@
-import type { EntityOf } from '#shared/contract/document.ts';
+import { type EntityOf, entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
 
 /** The part of a soil that says how it lets water through. */
 export type Permeable = Pick<EntityOf<'permeability'>, 'k' | 'kv' | 'dipDeg' | 'unit'>;
@@ -19,7 +19,8 @@ export const GREATEST_RATIO = 1e4;
 /** Dips in degrees that differ by less are one. */
 const SAME_DIP = 0.1;
 
-const NATURAL: CommonAnisotropy = { kind: 'natural', ratio: 1, dipDeg: 0 };
+/** An isotropic section. */
+export const NATURAL: CommonAnisotropy = { kind: 'natural', ratio: 1, dipDeg: 0 };
 const NONE: CommonAnisotropy = { kind: 'none', ratio: 1, dipDeg: 0 };
 
 /**
@@ -64,4 +65,20 @@ function isOne(ratio: number): boolean {
 function sameDip(a: number, b: number): boolean {
   const apart = Math.abs(a - b);
   return Math.min(apart, 180 - apart) <= SAME_DIP;
+}
+
+/**
+ * The one anisotropy of the soils of a document: of all that are placed somewhere, and of the section's unless its
+ * permeability is left open beside them. `implied` as in `commonAnisotropy`.
+ */
+export function anisotropyOf(
+  document: FlowNetDocument,
+  permeability: EntityOf<'permeability'>,
+  implied: number | null,
+): CommonAnisotropy {
+  const placed = entitiesOf(document, 'soil')
+    .filter(({ value }) => value.places.length > 0)
+    .map(({ value }) => value);
+  const section = permeability.k === null && placed.length > 0 ? [] : [permeability];
+  return commonAnisotropy([...section, ...placed], implied);
 }
