@@ -22,9 +22,9 @@ import type { Strip } from '#shared/compute/net/strips.ts';
 
 /**
  * Why a cell is not judged: the ground has a corner on it; a flow line ends within it; it lies at a face of free
- * outflow, which is neither flow line nor equipotential; it lies in more than one soil.
+ * outflow, which is neither flow line nor equipotential.
  */
-export type NotJudged = 'singular' | 'lineEnds' | 'freeFace' | 'severalSoils';
+export type NotJudged = 'singular' | 'lineEnds' | 'freeFace';
 
 /** A cell of the net: between two neighbouring head lines and two neighbouring rails. Working pixels. */
 export type NetCell = {

@@ -15,16 +15,32 @@ export const PLAIN_FACTS: CellFacts = { dropsBetween: () => 1, relativeK: () => 
 /** Within this factor the measured ratio of the cells is taken for the entered one. */
 const SAME_RATIO = 1.2;
 
+/** Permeabilities that differ by less than this part are those of one soil. */
+const SAME_SOIL = 1e-6;
+
+/**
+ * Permeability of a cell over that of the counted soil, dimensionless; `unknown` where the soil or its permeability is
+ * not known, `several` where the cell lies in more than one soil, asked half-way from its middle to its sides.
+ */
+export function soilOfCell({ measures }: NetCell, facts: CellFacts): number | 'unknown' | 'several' {
+  const { middle, along, across } = measures;
+  const k = facts.relativeK(middle);
+  if (k === null || !(k > 0)) return 'unknown';
+  const others = [along[1]!, along[3]!, across[1]!, across[3]!].map((place) => facts.relativeK(place));
+  return others.every((other) => other !== null && Math.abs(other / k - 1) <= SAME_SOIL) ? k : 'several';
+}
+
 /**
  * Flow through a cell for each drop of head and unit permeability of the counted soil: (k/kc)·ΔNd·B/L, dimensionless.
  * In a net of equal channels it is one number for all cells, squares or not, part drops and other soils included (flow
  * between two flow lines is the same all along: Forchheimer; Casagrande 1937). Null for cells that are not judged, and
- * where the permeability is unknown.
+ * where the permeability is unknown or more than one.
  */
 export function cellFlow(cell: NetCell, facts: CellFacts): number | null {
   if (cell.notJudged !== null) return null;
-  const k = facts.relativeK(cell.measures.middle);
-  const flow = k === null ? Number.NaN : k * facts.dropsBetween(cell.before, cell.after) * cell.ratio;
+  const k = soilOfCell(cell, facts);
+  if (k === 'unknown' || k === 'several') return null;
+  const flow = k * facts.dropsBetween(cell.before, cell.after) * cell.ratio;
   return Number.isFinite(flow) && flow > 0 ? flow : null;
 }
 

@@ -1,6 +1,6 @@
 import type { NetCell } from '#shared/compute/cells/cells.ts';
 import type { CellChannel } from '#shared/compute/cells/channels.ts';
-import { type CellFacts, middleValue, tremorOf } from '#shared/compute/cells/common-ratio.ts';
+import { type CellFacts, middleValue, soilOfCell, tremorOf } from '#shared/compute/cells/common-ratio.ts';
 import type { NetMeeting } from '#shared/compute/net-check/crossings.ts';
 import { cellEffect, meetingEffect } from '#shared/compute/net-check/effects.ts';
 import {
@@ -55,8 +55,9 @@ export function judgeCell(
   accuracyPx: number,
 ): JudgedCell {
   if (cell.notJudged !== null) return unjudged(cell.notJudged);
-  const k = facts.relativeK(cell.measures.middle);
-  if (k === null) return unjudged('unknownSoil');
+  const k = soilOfCell(cell, facts);
+  if (k === 'unknown') return unjudged('unknownSoil');
+  if (k === 'several') return unjudged('severalSoils');
   const drops = facts.dropsBetween(cell.before, cell.after);
   const expected = (judgedBy * part) / (k * drops);
   if (!Number.isFinite(expected) || !(expected > 0)) return unjudged('unknownSoil');
