@@ -2,13 +2,21 @@ import { writeFileSync } from 'node:fs';
 import { parseArgs } from 'node:util';
 import type { Bench, BenchRow } from './bench.ts';
 import { firstLoad } from './first-load.ts';
+import { independentSolution } from './independent-bench.ts';
 import { panFrame } from './pan-frame.ts';
 import { scheduleApi } from './schedule-api.ts';
 import { tableOf } from './table.ts';
 import { uploadGroupFour, uploadJpeg } from './upload-a1.ts';
 
 /** npm run bench [-- --only NAME --json FILE] */
-const benches: readonly Bench[] = [uploadGroupFour, uploadJpeg, panFrame, firstLoad, scheduleApi];
+const benches: readonly Bench[] = [
+  uploadGroupFour,
+  uploadJpeg,
+  panFrame,
+  firstLoad,
+  scheduleApi,
+  independentSolution,
+];
 
 const { values: options } = parseArgs({
   options: { only: { type: 'string', multiple: true }, json: { type: 'string' } },
