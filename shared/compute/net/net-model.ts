@@ -9,7 +9,7 @@ import { type HeadLine, neighbourLinks } from '#shared/compute/net/neighbours.ts
 import { checkLines } from '#shared/compute/net/net-checks.ts';
 import { linesOfKind, medianLength, type NetLine, netLinesOf } from '#shared/compute/net/net-lines.ts';
 import { questionOpenEnds } from '#shared/compute/net/open-ends.ts';
-import { type FlowOrder, orderAlongFlow } from '#shared/compute/net/order.ts';
+import { type FlowOrder, orderAlongFlow, withPassed } from '#shared/compute/net/order.ts';
 import { type Potential, potentialsOf } from '#shared/compute/net/potentials.ts';
 import { type Strip, type StripLine, stripBetween } from '#shared/compute/net/strips.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
@@ -73,10 +73,12 @@ export function modelNet(
   const heads = headLines(equipotentials, potentials);
   const links = neighbourLinks(heads, shapesOf(walls), shapesOf(flowLines));
   const levels = new Map(potentials.map(({ id, outHead }) => [id, outHead]));
-  const order = orderAlongFlow(heads, links, levels);
-  const strips = stripsOf(order, equipotentials, potentials, (more) =>
+  const seen = orderAlongFlow(heads, links, levels);
+  const strips = stripsOf(seen, equipotentials, potentials, (more) =>
     carrierGraph([...carriers, ...more], potentials, reach),
   );
+  const held = new Set(carriers.filter((carrier) => carrier.held === 'atOneHead').map(({ id }) => id));
+  const order = withPassed(seen, held, strips);
   return {
     lines,
     equipotentials,
@@ -226,7 +228,7 @@ function orderFindings(
 
 /**
  * Drains, faces of free outflow and waters at another level that take no part though the flow reaches another outlet: a
- * net drawn without the drain holds for a section without it. One along which equipotentials end does take part.
+ * net drawn without the drain holds for a section without it. A free face along which equipotentials end does take part.
  */
 function leftOut(
   order: FlowOrder,
@@ -240,11 +242,11 @@ function leftOut(
     equipotentials.some(({ footed }) => footed.start?.carrier.id === id || footed.end?.carrier.id === id);
   return potentials
     .filter(
-      ({ id, role, line, outHead }) =>
+      ({ id, role, line, level, outHead }) =>
         role === 'outlet' &&
         (line.kind !== 'submergedFace' || outHead !== lowest) &&
         !order.place.has(id) &&
-        !bearsFoot(id),
+        !(level === null && bearsFoot(id)),
     )
     .map(({ members, label, line }) =>
       makeFinding(

@@ -107,3 +107,35 @@ function drawnAlike(a: string, b: string, region: FlowRegion, links: readonly Ne
   const sideOf = (id: string) => region.sides.find((side) => side.id === id)?.side ?? null;
   return sideOf(a) !== sideOf(b);
 }
+
+/**
+ * The order with the boundaries that the flow passes as the outlines of the strips tell it: what is seen along straight
+ * lines misses a bed on which an equipotential ends. `held`: ids of boundaries that can be on an outline; `outlines`: the
+ * strips with what is held along them.
+ */
+export function withPassed(
+  order: FlowOrder,
+  held: ReadonlySet<string>,
+  outlines: ReadonlyArray<{
+    readonly before: string;
+    readonly after: string;
+    readonly held: ReadonlyArray<{ readonly id: string }>;
+  }>,
+): FlowOrder {
+  const lines = new Set(order.sequence);
+  const onOutlines = outlines.flatMap((strip): PassedBoundary[] => {
+    const pair = order.pairs.find(({ before, after }) => before === strip.before && after === strip.after);
+    const round = [strip.before, strip.after, ...(pair?.beside ?? [])].filter((id) => lines.has(id));
+    const after = lines.has(strip.before) ? strip.before : null;
+    const ids = new Set(strip.held.map(({ id }) => id).filter((id) => held.has(id)));
+    return [...ids].map((boundary) => ({ boundary, after, lines: round }));
+  });
+  const passed = [...order.passed.filter(({ boundary }) => !held.has(boundary)), ...onOutlines];
+  const ends = new Set(order.paths.flatMap(({ source, outlet }) => [source, outlet]));
+  const met = new Set([...ends, ...passed.map(({ boundary }) => boundary)]);
+  const place = new Map([...order.place].filter(([id]) => !held.has(id) || met.has(id)));
+  const last = Math.max(0, ...order.sequence.map((id) => order.place.get(id) ?? 0)) + 1;
+  for (const id of met) if (!place.has(id)) place.set(id, last);
+  const outlets = [...met].filter((id) => held.has(id) || order.outlets.includes(id));
+  return { ...order, passed, place, outlets };
+}

@@ -63,7 +63,10 @@ describe('a line whose end reaches no boundary', () => {
     )[4]!;
     const tip = line.value.kind === 'line' ? line.value.points.at(-1) : null;
     const gaps = gapsIn(document);
-    expect(gaps).toMatchObject([{ weight: 'question', cell: 'netCheck', entityIds: [line.id], at: tip }]);
+    expect(gaps).toMatchObject([{ weight: 'question', cell: 'netCheck', entityIds: [line.id] }]);
+    // The trace is read without its tremor, by which the tip may move.
+    const [x, y] = gaps[0]!.at!;
+    expect(Math.hypot(x - tip![0], y - tip![1])).toBeLessThan(3);
     expect(gaps[0]?.text).toMatch(/at one end\. Extend it to the boundary, or trace the boundary/);
     expect(readNet(document).state).toBe('read');
   });
