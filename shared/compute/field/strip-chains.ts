@@ -11,7 +11,7 @@ import { distanceToSegment } from '#shared/compute/geometry/thin.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
 
 /** A line may be held off its place by this part of the strip's width: that part of a drop is lost by it. */
-const HELD_OFF = 0.003;
+const HELD_OFF = 0.001;
 
 /** What the mesh of a strip has to keep: its two lines, its two ends, and what stands inside. */
 export type StripChains = {

@@ -17,7 +17,7 @@ export type Chain = { readonly points: readonly Pair[]; readonly kind: EdgeKind 
 const ACROSS = 6;
 /** Growth of the elements away from a place where the gradient is endless, and their size there, pixels. */
 const GROWTH = 0.3;
-const LEAST_SIZE_PX = 1;
+const LEAST_SIZE_PX = 0.25;
 /**
  * Near a corner the head varies with the distance to the power π/θ, θ the angle inside, or π/2θ where a held line meets
  * a closed one. Below this power it is too steep for the usual elements.

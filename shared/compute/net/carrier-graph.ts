@@ -12,7 +12,14 @@ import { cheapestFirst } from '#shared/compute/net/cheapest-first.ts';
 import type { Carrier } from '#shared/compute/net/feet.ts';
 
 /** A place where a carrier meets another line: a carrier, or a potential boundary (which ends the way). */
-type Touch = { readonly carrier: string; readonly s: number; readonly other: string; readonly t: number };
+type Touch = {
+  readonly carrier: string;
+  readonly s: number;
+  readonly other: string;
+  readonly t: number;
+  /** How far the two lines are apart there: 0 where they cross. */
+  readonly gap: number;
+};
 
 /** The carriers of a net, where they meet each other, and where they meet the potential boundaries. */
 export type CarrierGraph = {
@@ -47,17 +54,17 @@ export function carrierGraph(
   const twins = new Map<Touch, Touch>();
   carriers.forEach((carrier, i) => {
     for (const other of carriers.slice(i + 1)) {
-      for (const [s, t] of meetings(carrier.shape, other.shape, reach)) {
-        const touch = { carrier: carrier.id, s, other: other.id, t };
-        const twin = { carrier: other.id, s: t, other: carrier.id, t: s };
+      for (const [s, t, gap] of meetings(carrier.shape, other.shape, reach)) {
+        const touch = { carrier: carrier.id, s, other: other.id, t, gap };
+        const twin = { carrier: other.id, s: t, other: carrier.id, t: s, gap };
         touches.push(touch, twin);
         twins.set(touch, twin).set(twin, touch);
       }
     }
     for (const potential of potentials) {
       if (potential.id === carrier.id) continue;
-      for (const [s, t] of meetings(carrier.shape, potential.shape, reach)) {
-        touches.push({ carrier: carrier.id, s, other: potential.id, t });
+      for (const [s, t, gap] of meetings(carrier.shape, potential.shape, reach)) {
+        touches.push({ carrier: carrier.id, s, other: potential.id, t, gap });
       }
     }
   });
@@ -66,21 +73,21 @@ export function carrierGraph(
   return { carriers: new Map(carriers.map((carrier) => [carrier.id, carrier])), along, twins };
 }
 
-function meetings(first: Polyline, second: Polyline, reach: number): Array<readonly [s: number, t: number]> {
-  const found: Array<readonly [number, number]> = crossingsOf(first, second).map(
-    ({ s, t }) => [s, t] as const,
-  );
-  const addEnd = (s: number, t: number) => {
+type Meeting = readonly [s: number, t: number, gap: number];
+
+function meetings(first: Polyline, second: Polyline, reach: number): Meeting[] {
+  const found: Meeting[] = crossingsOf(first, second).map(({ s, t }) => [s, t, 0] as const);
+  const addEnd = (s: number, t: number, gap: number) => {
     if (!found.some((place) => Math.abs(place[0] - s) <= reach && Math.abs(place[1] - t) <= reach))
-      found.push([s, t]);
+      found.push([s, t, gap]);
   };
   for (const [end, s] of [[firstOf(first), 0] as const, [lastOf(first), lengthOf(first)] as const]) {
     const place = nearestOnPolyline(second, end[0], end[1]);
-    if (place.distance <= reach) addEnd(s, place.s);
+    if (place.distance <= reach) addEnd(s, place.s, place.distance);
   }
   for (const [end, t] of [[firstOf(second), 0] as const, [lastOf(second), lengthOf(second)] as const]) {
     const place = nearestOnPolyline(first, end[0], end[1]);
-    if (place.distance <= reach) addEnd(place.s, t);
+    if (place.distance <= reach) addEnd(place.s, t, place.distance);
   }
   return found;
 }
@@ -149,7 +156,16 @@ function onwardFrom(here: Stop, { shape, id }: Carrier, graph: CarrierGraph): St
     stops.push({ carrier: id, s: touch.s, cost, before: here, touch });
   }
   const twin = here.touch === null ? undefined : graph.twins.get(here.touch);
-  if (twin) stops.push({ carrier: twin.carrier, s: twin.s, cost: here.cost, before: here, touch: twin });
+  // A gap is as long as it is: else a way would leap from line to line rather than go on along its own.
+  if (twin) {
+    stops.push({
+      carrier: twin.carrier,
+      s: twin.s,
+      cost: here.cost + twin.gap,
+      before: here,
+      touch: twin,
+    });
+  }
   return stops;
 }
 

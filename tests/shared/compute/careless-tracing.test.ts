@@ -46,7 +46,11 @@ describe.each(EXACT_NETS)('a carelessly traced net: $name', ({ net, pxPerUnit })
       reading.points.forEach((point, i) => {
         if (point.totalHead === null) return;
         const error = Math.abs(point.totalHead - net.headAt(...readings[i]!.at)) / drop;
-        expect(error, `seed ${seed}, ${point.name}: ${point.explanation}`).toBeLessThan(0.35);
+        // Where a wall ends some 45 px short, field and hand part, and the point is questioned.
+        const isQuestioned = point.findings.some(({ code }) => code === 'rulesDiffer');
+        expect(error, `seed ${seed}, ${point.name}: ${point.explanation}`).toBeLessThan(
+          isQuestioned ? 0.6 : 0.35,
+        );
       });
     }
   });

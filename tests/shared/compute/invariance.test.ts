@@ -10,18 +10,24 @@ import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
 
 /** In drops: coordinates of 1e4 px to double precision, times the steepest cell, with room to spare. */
 const SAME = 1e-9;
+/** In drops: the elements of the field lie otherwise on a turned sheet, and it is as exact as they are small. */
+const SAME_FIELD = 0.008;
 
 /** Drops lost at each point, in the order of the points' names; the same places are asked in every variant. */
-function dropsOf(reading: NetReading): number[] {
+function dropsOf(reading: NetReading): Array<{ byHand: number; byField: number }> {
   expect(reading.state, reading.findings.map((found) => found.text).join(' ')).toBe('read');
   return [...reading.points]
     .sort((a, b) => Number(a.name.slice(1)) - Number(b.name.slice(1)))
-    .map((point) => point.dropsLost ?? Number.NaN);
+    .map(({ byHand, byField }) => ({
+      byHand: byHand?.dropsLost ?? Number.NaN,
+      byField: byField?.dropsLost ?? Number.NaN,
+    }));
 }
 
-function expectSame(actual: number[], expected: number[], tolerance: number): void {
+function expectSame(actual: ReturnType<typeof dropsOf>, expected: ReturnType<typeof dropsOf>): void {
   actual.forEach((drops, i) => {
-    expect(Math.abs(drops - expected[i]!)).toBeLessThan(tolerance);
+    expect(Math.abs(drops.byHand - expected[i]!.byHand)).toBeLessThan(SAME);
+    expect(Math.abs(drops.byField - expected[i]!.byField)).toBeLessThan(SAME_FIELD);
   });
 }
 
@@ -85,7 +91,7 @@ describe.each(EXACT_NETS)(
             const drops = dropsOf(
               readNet(traced({ turnDeg, mirrored, centre: [2500 + shift, 1750 - shift] })),
             );
-            expectSame(drops, plain, SAME);
+            expectSame(drops, plain);
           },
         ),
         {
@@ -102,22 +108,22 @@ describe.each(EXACT_NETS)(
     it('is unchanged by scaling the sheet, but for the vertices falling elsewhere', () => {
       for (const scale of [0.5, 2]) {
         const drops = dropsOf(readNet(traced({ pxPerUnit: pxPerUnit * scale, spacingPx: 14 * scale })));
-        expectSame(drops, plain, SAME);
+        expectSame(drops, plain);
       }
     });
 
     it('is unchanged by the order of drawing and the direction of the lines', () => {
       fc.assert(
         fc.property(fc.nat(1_000_000), (seed) => {
-          expectSame(dropsOf(readNet(drawnInAnotherOrder(traced(), seed))), plain, SAME);
-          expectSame(dropsOf(readNet(someLinesReversed(traced(), seed))), plain, SAME);
+          expectSame(dropsOf(readNet(drawnInAnotherOrder(traced(), seed))), plain);
+          expectSame(dropsOf(readNet(someLinesReversed(traced(), seed))), plain);
         }),
         { numRuns: 8 },
       );
     });
 
     it('is unchanged by more vertices on the same lines', () => {
-      expectSame(dropsOf(readNet(withMoreVertices(traced()))), plain, SAME);
+      expectSame(dropsOf(readNet(withMoreVertices(traced()))), plain);
     });
   },
 );
