@@ -23,8 +23,6 @@ export type NetMeeting = {
   readonly angleDeg: number;
   /** Standard deviation of it from the tracing accuracy, degrees. */
   readonly tremorDeg: number;
-  /** False where the tracing does not say how a line bends. */
-  readonly isKnown: boolean;
   /** Mean length and width of the cells round it. */
   readonly length: number;
   readonly width: number;
@@ -104,7 +102,7 @@ function angleAt(
   kind: MeetingKind,
   cell: number,
   accuracyPx: number,
-): Pick<NetMeeting, 'angleDeg' | 'tremorDeg' | 'isKnown'> {
+): Pick<NetMeeting, 'angleDeg' | 'tremorDeg'> {
   const headFit = kind === 'flowLineAtPotential' ? tangentOfBoundary : tangentOfCurve;
   const flowFit = kind === 'equipotentialAtImpervious' ? tangentOfBoundary : tangentOfCurve;
   const onHead = fitAt(headFit, head, at, cell, accuracyPx);
@@ -114,7 +112,6 @@ function angleAt(
   return {
     angleDeg: Math.min(angle, 180 - angle),
     tremorDeg: degrees * Math.hypot(onHead.tremor, onFlow.tremor),
-    isKnown: onHead.isKnown && onFlow.isKnown,
   };
 }
 

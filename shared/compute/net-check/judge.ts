@@ -75,8 +75,7 @@ export function unjudged(reason: NonNullable<CheckedCell['reason']>): JudgedCell
 export function judgeMeeting(meeting: NetMeeting): { judgement: NetJudgement; effectDrops: number } {
   const off = 90 - meeting.angleDeg;
   const effectDrops = meetingEffect(meeting, off);
-  if (!meeting.isKnown || 2 * meeting.tremorDeg > ANGLE_KNOWN_DEG)
-    return { judgement: 'notJudged', effectDrops };
+  if (2 * meeting.tremorDeg > ANGLE_KNOWN_DEG) return { judgement: 'notJudged', effectDrops };
   const certain = off - ANGLE_SURE * meeting.tremorDeg;
   const isPoor = certain > 0 && meetingEffect(meeting, certain) > ANGLE_TOLD;
   return { judgement: isPoor ? 'poor' : 'good', effectDrops };

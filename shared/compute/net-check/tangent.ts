@@ -1,21 +1,17 @@
+import { angleBetween } from '#shared/compute/cells/quadrilateral.ts';
 import { type Polyline, pointAlong, segmentAlong } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
-/** Direction of a traced line at a place, and how far the hand's tremor may have turned it (standard deviation, radians). */
-export type Tangent = {
-  readonly direction: Pair;
-  readonly tremor: number;
-  /** False at an end of a line whose vertices lie too far apart to say how it bends there. */
-  readonly isKnown: boolean;
-};
+/** Direction of a traced line at a place, and how far the tracing may have turned it (standard deviation, radians). */
+export type Tangent = { readonly direction: Pair; readonly tremor: number };
 
-type Fit = Omit<Tangent, 'isKnown'>;
 type Sample = { readonly by: number; readonly at: Pair };
 
 /** Vertices that a fit to a freely curved line takes at least, so that tremor and curve can be told apart. */
 const LEAST_VERTICES = 5;
 /** At an end the vertices of a fit may lie this many windows away. */
 const MOST_WINDOWS = 2;
+const BEND_PART = 0.25;
 /** Places at which a straight-sided boundary is sampled. */
 const SAMPLES = 9;
 
@@ -28,11 +24,33 @@ const SAMPLES = 9;
 export function tangentOfCurve(shape: Polyline, s: number, window: number, accuracyPx: number): Tangent {
   const samples = verticesAbout(shape, s, window);
   const [back, on] = [-samples[0]!.by, samples[samples.length - 1]!.by];
-  const isOneSided = Math.min(back, on) < window / 2;
-  return {
-    ...(fitted(samples, samples.length, accuracyPx) ?? chordAt(shape, s, accuracyPx)),
-    isKnown: !isOneSided || Math.max(back, on) <= MOST_WINDOWS * window,
-  };
+  const isEnd = Math.min(back, on) < window / 2;
+  if (isEnd && Math.max(back, on) > MOST_WINDOWS * window)
+    return tangentAtSparseEnd(samples, shape, s, accuracyPx);
+  return fitted(samples, samples.length, accuracyPx) ?? chordAt(shape, s, accuracyPx);
+}
+
+/**
+ * Direction at an end of a line whose vertices lie far apart: of the parabola through the three next to it. How the line
+ * bends between them nobody has traced: a quarter of the bend from the first to the second piece counts as the standard
+ * deviation of the direction.
+ */
+function tangentAtSparseEnd(
+  samples: readonly Sample[],
+  shape: Polyline,
+  s: number,
+  accuracyPx: number,
+): Tangent {
+  const nearest = [...samples].sort((a, b) => Math.abs(a.by) - Math.abs(b.by)).slice(0, 3);
+  const found = fitted(nearest, nearest.length, accuracyPx);
+  if (found === null) return chordAt(shape, s, accuracyPx);
+  const [a, b, c] = [...nearest].sort((first, second) => first.by - second.by).map(({ at }) => at) as [
+    Pair,
+    Pair,
+    Pair,
+  ];
+  const bend = angleBetween([b[0] - a[0], b[1] - a[1]], [c[0] - b[0], c[1] - b[1]]);
+  return { ...found, tremor: Math.hypot(found.tremor, (BEND_PART * bend * Math.PI) / 180) };
 }
 
 /**
@@ -48,10 +66,7 @@ export function tangentOfBoundary(shape: Polyline, s: number, window: number, ac
     return { by: along - s, at: pointAlong(shape, along) };
   });
   const vertices = shape.cum.filter((along) => along >= from && along <= to).length;
-  return {
-    ...(fitted(samples, Math.max(2, vertices), accuracyPx) ?? chordAt(shape, s, accuracyPx)),
-    isKnown: true,
-  };
+  return fitted(samples, Math.max(2, vertices), accuracyPx) ?? chordAt(shape, s, accuracyPx);
 }
 
 function verticesAbout(shape: Polyline, s: number, window: number): Sample[] {
@@ -74,7 +89,7 @@ function verticesAbout(shape: Polyline, s: number, window: number): Sample[] {
 }
 
 /** Slope at 0 of the parabola (of the straight line through two samples) and its tremor; null when it has no direction. */
-function fitted(samples: readonly Sample[], independent: number, accuracyPx: number): Fit | null {
+function fitted(samples: readonly Sample[], independent: number, accuracyPx: number): Tangent | null {
   const scale = Math.max(...samples.map(({ by }) => Math.abs(by)));
   if (samples.length < 3 || !(scale > 0)) return null;
   const sums = [0, 0, 0, 0, 0];
@@ -131,7 +146,7 @@ function inverseOf(sums: readonly number[]): number[][] | null {
   ].map((row) => row.map((entry) => entry / determinant));
 }
 
-function chordAt(shape: Polyline, s: number, accuracyPx: number): Fit {
+function chordAt(shape: Polyline, s: number, accuracyPx: number): Tangent {
   const i = segmentAlong(shape, s);
   const length = shape.cum[i + 1]! - shape.cum[i]!;
   return {
