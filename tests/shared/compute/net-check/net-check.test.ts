@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { ExactNet } from '#shared/compute/exact/exact-net.ts';
 import { netCheckOf } from '#shared/compute/net-check/net-check.ts';
 import { questionNetCheck } from '#shared/compute/net-check/net-check-findings.ts';
+import { readNet } from '#shared/compute/read-net.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import { type NetCheckReading, netCheckReading } from '#shared/contract/reading-net-check.ts';
 import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
@@ -239,6 +240,41 @@ describe('channels and the common ratio', () => {
     expect(none.summary).toMatchObject({ cellsJudged: 0, anglesJudged: 0 });
     expect(none.summary.text).toContain('share no transformed section');
     expect(questionNetCheck(none, 'SI')).toEqual([]);
+  });
+});
+
+describe('a section that is not isotropic', () => {
+  /** The apron's net as it lies in a ground with kh/kv = 4, that is twice as long along the bedding (Samsioe 1931). */
+  const stretched: ExactNet = {
+    ...apron.net,
+    lines: apron.net.lines.map((line) => ({
+      ...line,
+      at: (part) => {
+        const [offset, elevation] = line.at(part);
+        return [2 * offset, elevation];
+      },
+    })),
+  };
+  const document = exactNetDocument(stretched, { pxPerUnit: apron.pxPerUnit, jitterPx: 1 });
+
+  it('is judged in its transformed section, where its cells are squares', () => {
+    const layered = changed(document, 'permeability', (value) => ({ ...value, k: 4e-6, kv: 1e-6 }));
+    const { netCheck, quantities } = readNet(layered);
+    expect(netCheck!.faults).toEqual([]);
+    expect(netCheck!.summary.cellsJudged).toBeGreaterThan(75);
+    expect(Math.abs(netCheck!.measuredRatio! - 1)).toBeLessThan(0.02);
+    // q = √(kh·kv)·H·Nf/Nd, by the cells as by the count.
+    const seepage = (2e-6 * 6 * 7) / 12;
+    expect(Math.abs(quantities.seepage! / seepage - 1)).toBeLessThan(1e-3);
+    expect(Math.abs(netCheck!.measuredSeepage! / seepage - 1)).toBeLessThan(0.02);
+    // The lengths are those of the natural section: under the middle of the apron the flow runs along the bedding.
+    const middle = netCheck!.cells.find(({ before }) => before === equipotentialIds(document)[5])!;
+    expect(middle.length / middle.width).toBeGreaterThan(1.8);
+  });
+
+  it('is told to be no net of squares when its anisotropy is not said', () => {
+    const { netCheck } = readNet(document);
+    expect(netCheck!.summary.cellsPoor).toBeGreaterThan(20);
   });
 });
 
