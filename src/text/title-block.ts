@@ -44,6 +44,9 @@ export const titleBlockText = {
   /** The other cells say that the net is unfinished; here only a count that differs is worth a word. */
   dropsStated: (stated: string, traced: string | null) =>
     traced === null || traced === stated ? `${stated} stated` : `${stated} stated, ${traced} traced`,
+  /** With outlets at several heads each has its own count. */
+  dropsToEach: (outlets: ReadonlyArray<{ label: string; drops: string }>) =>
+    outlets.map(({ label, drops }) => `${drops} to ${label}`).join(', '),
   channelsNone: 'None',
   unequal: 'Unequal intervals',
   notYet: 'Net unfinished',

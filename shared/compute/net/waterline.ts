@@ -20,7 +20,9 @@ export function checkWaterline(
   tolerance: number,
   levelUnit: string,
 ): Finding[] {
-  const faces = linesOfKind(lines, 'submergedFace').filter((line) => line.value.water === 'headwater');
+  const faces = linesOfKind(lines, 'submergedFace').filter(
+    ({ value }) => value.water === 'headwater' && value.head === null,
+  );
   const phreatics = linesOfKind(lines, 'phreaticLine');
   const starts = phreatics.map((line) => ({ line, at: startOf(line, faces) }));
   if (starts.length === 0) return questionFaces(faces, map, headwater, tolerance, levelUnit);

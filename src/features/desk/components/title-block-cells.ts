@@ -145,8 +145,15 @@ function outletOf(document: FlowNetDocument, reading: NetReading | null): Told {
 function dropsOf(document: FlowNetDocument, reading: NetReading | null): Told {
   const label = text.labels.drops;
   if (!reading) return { label, value: WAITING };
-  const { drops, tracedDrops } = reading.quantities;
+  const { drops, tracedDrops, outlets } = reading.quantities;
   if (drops !== null) return { label, value: [plainText(drops)] };
+  if (outlets.length > 1) {
+    const each = outlets.map((outlet) => ({
+      label: outlet.label,
+      drops: outlet.drops === null ? '–' : plainText(Math.round(outlet.drops * 100) / 100),
+    }));
+    return { label, value: [text.dropsToEach(each)] };
+  }
   const stated = singleOf(document, 'netCount')?.value.drops ?? null;
   const traced = tracedDrops === null ? null : plainText(tracedDrops);
   if (stated !== null)

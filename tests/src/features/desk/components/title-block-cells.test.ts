@@ -53,6 +53,21 @@ describe('the title block', () => {
     expect(cell('headPerDrop')).toBe('Head per drop: Net unfinished [missing]');
   });
 
+  it('counts the drops to each outlet where they lie at several heads', () => {
+    const at = { members: [], head: 98, headLost: 8, channels: null, seepage: null };
+    const { cell } = block(
+      { [ID(1)]: water(106) },
+      {
+        drops: null,
+        outlets: [
+          { ...at, id: 'a', label: 'the drain', drops: 15.5 },
+          { ...at, id: 'b', label: 'the tailwater boundary', drops: 11.599999999 },
+        ],
+      },
+    );
+    expect(cell('drops')).toBe('Drops: 15.5 to the drain, 11.6 to the tailwater boundary [ok]');
+  });
+
   it('shows nothing worked out while there is no reading', () => {
     const cells = titleBlockCells(documentWith({}), null, FACTS);
     expect(plain(cells.find((each) => each.id === 'drops')?.value ?? [])).toBe('…');
