@@ -1,6 +1,7 @@
 import { cellsOf, type NetCells } from '#shared/compute/cells/cells.ts';
 import { NO_QUANTITY_DOUBT, netDoubtOf, quantityDoubtOf } from '#shared/compute/doubt/net-doubt.ts';
 import type { NetDoubt } from '#shared/compute/doubt/point-doubt.ts';
+import type { FieldMemory } from '#shared/compute/field/field-memory.ts';
 import { fieldsOnDemand } from '#shared/compute/field/strip-fields.ts';
 import { withholdsFigures } from '#shared/compute/findings.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
@@ -87,6 +88,7 @@ export function prepareNet(
   setOut: SetOut,
   sheetMap: SectionMap,
   inputs: SingleInputs,
+  memory: FieldMemory | null = null,
 ): PreparedNet {
   const { water, count } = inputs;
   const frame = workingFrameOf(sheetMap, anisotropyOf(document, inputs.permeability, setOut.impliedRatio));
@@ -163,7 +165,7 @@ export function prepareNet(
     cells,
     netCheck,
     soils,
-    ground: groundOf(model, heads, frame, soils, doubt, inputs, levelUnit),
+    ground: groundOf(model, heads, frame, soils, doubt, inputs, levelUnit, memory),
     doubt: finished ? quantityDoubtOf(doubt, quantities, netCheck.cells, counted) : NO_QUANTITY_DOUBT,
     quantities,
     findings,
@@ -202,6 +204,7 @@ function groundOf(
   doubt: NetDoubt,
   inputs: SingleInputs,
   levelUnit: string,
+  memory: FieldMemory | null,
 ): ReadingGround {
   const shapes = (...kinds: Parameters<typeof linesOfKind>[1][]) =>
     linesOfKind(model.lines, ...kinds).map((line) => line.shape);
@@ -219,7 +222,7 @@ function groundOf(
   return {
     ...fieldGround,
     strips: model.strips,
-    fieldOf: fieldsOnDemand(fieldGround),
+    fieldOf: fieldsOnDemand(fieldGround, memory),
     bodies: solidBodies(shapes('impervious'), shapes('equipotential'), model.reach),
     phreaticLines: shapes('phreaticLine'),
     faces: shapes('ground', 'submergedFace', 'outflowFace'),

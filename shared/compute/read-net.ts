@@ -1,5 +1,6 @@
 import { compareMeasured } from '#shared/compute/compare-measured.ts';
 import { NO_QUANTITY_DOUBT } from '#shared/compute/doubt/net-doubt.ts';
+import type { FieldMemory } from '#shared/compute/field/field-memory.ts';
 import {
   extentOf,
   questionCellRatio,
@@ -15,6 +16,9 @@ import { type PlacedPoint, readPoint, withholdPoint } from '#shared/compute/net/
 import { findTangles } from '#shared/compute/net/tangles.ts';
 import { phreaticOnSheet } from '#shared/compute/phreatic/read-phreatic.ts';
 import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
+import { profilesRead } from '#shared/compute/profiles/read-profiles.ts';
+import { exitsRead } from '#shared/compute/quantities/exits.ts';
+import { NO_STABILITY, stabilityRead } from '#shared/compute/quantities/stability.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
 import { type SingleInputs, singleInputs } from '#shared/compute/single-inputs.ts';
@@ -27,24 +31,25 @@ import type { Finding, LineReading, NetReading, PointReading } from '#shared/con
  *
  * Pure and total: it answers every document that the schema admits, and never throws. While something is missing or
  * wrong the state is `unfinished` and no point has a figure; the findings say what to do and where. Heads and
- * elevations are in the document's length unit, pressures in kPa (SI) or lb/ft² (US); figures are unrounded.
+ * elevations are in the document's length unit, pressures in kPa (SI) or lb/ft² (US); figures are unrounded. `memory`
+ * spares work that an earlier reading has done and alters no figure.
  */
-export function readNet(document: FlowNetDocument): NetReading {
-  const reading = readLines(document);
+export function readNet(document: FlowNetDocument, memory: FieldMemory | null = null): NetReading {
+  const reading = readLines(document, memory);
   return { ...reading, measured: compareMeasured(document, reading.points) };
 }
 
 /** All that is read off the lines, before it is held against what was measured. */
 type LinesRead = Omit<NetReading, 'measured'>;
 
-function readLines(document: FlowNetDocument): LinesRead {
+function readLines(document: FlowNetDocument, memory: FieldMemory | null): LinesRead {
   const inputs = singleInputs(document);
   const setOut = readSetOut(document);
   const points = placedPoints(document, setOut.map);
   const tangles = findTangles(netLinesOf(document), inputs.count.tracingAccuracyPx);
   // Nothing is worked out from a tangle: it would take its time over every crossing, and come to nothing.
   if (setOut.map === null || tangles.length > 0) return withoutNet(document, setOut, tangles, inputs, points);
-  return readOnSection(document, setOut, setOut.map, inputs);
+  return readOnSection(document, setOut, setOut.map, inputs, memory);
 }
 
 function withoutNet(
@@ -72,6 +77,9 @@ function withoutNet(
     soils: null,
     netCheck: null,
     doubt: NO_QUANTITY_DOUBT,
+    profiles: profilesRead(document, null, null),
+    exits: [],
+    stability: NO_STABILITY,
   };
 }
 
@@ -80,8 +88,9 @@ function readOnSection(
   setOut: SetOut,
   map: SectionMap,
   inputs: SingleInputs,
+  memory: FieldMemory | null,
 ): LinesRead {
-  const prepared = prepareNet(document, setOut, map, inputs);
+  const prepared = prepareNet(document, setOut, map, inputs, memory);
   const { frame, model, heads, ground, quantities, findings, finished } = prepared;
   const points = placedPoints(prepared.working, frame.map);
   const extent = extentOf(model.lines, frame.map);
@@ -103,6 +112,9 @@ function readOnSection(
     soils: prepared.soils.reading,
     netCheck: prepared.netCheck,
     doubt: prepared.doubt,
+    profiles: profilesRead(document, prepared, inputs.water.tailwater),
+    exits: exitsRead(prepared),
+    stability: stabilityRead(prepared),
   };
 }
 

@@ -1,3 +1,4 @@
+import type { FieldMemory } from '#shared/compute/field/field-memory.ts';
 import { type StripField, solveStrip } from '#shared/compute/field/strip-field.ts';
 import { nearestOnPolyline } from '#shared/compute/geometry/polyline.ts';
 import type { HeadOfLine } from '#shared/compute/net/net-heads.ts';
@@ -14,13 +15,14 @@ export type FieldGround = Pick<
   'map' | 'heads' | 'walls' | 'freeFaces' | 'soilBoundaries' | 'tensorAt' | 'slack'
 >;
 
-/** Solves a strip the first time it is asked for, and keeps it. */
-export function fieldsOnDemand(ground: FieldGround): FieldOfStrip {
+/** Solves a strip the first time it is asked for, and keeps it; what `memory` has of earlier readings is not solved. */
+export function fieldsOnDemand(ground: FieldGround, memory: FieldMemory | null): FieldOfStrip {
   const solved = new Map<Strip, StripField | null>();
   return (strip) => {
     const known = solved.get(strip);
     if (known !== undefined) return known;
-    const field = solveOn(strip, ground);
+    const solve = () => solveOn(strip, ground);
+    const field = memory === null ? solve() : memory.fieldOf(strip, ground, solve);
     solved.set(strip, field);
     return field;
   };

@@ -6,6 +6,17 @@ import {
   type TracedLine,
 } from '#shared/contract/document.ts';
 
+/** Shapes are kept as long as the lines are: a line that was not touched is not measured again. */
+const shapes = new WeakMap<TracedLine, Polyline | null>();
+
+function shapeOf(value: TracedLine): Polyline | null {
+  const known = shapes.get(value);
+  if (known !== undefined) return known;
+  const shape = polylineOf(value.points);
+  shapes.set(value, shape);
+  return shape;
+}
+
 /** A finished traced line with its shape in base-raster pixels. */
 export type NetLine = {
   readonly id: string;
@@ -21,7 +32,7 @@ export type NetLine = {
 export function netLinesOf(document: FlowNetDocument): NetLine[] {
   const lines: NetLine[] = [];
   for (const { id, value } of entitiesOf(document, 'line')) {
-    const shape = value.finished ? polylineOf(value.points) : null;
+    const shape = value.finished ? shapeOf(value) : null;
     if (shape !== null) lines.push({ id, kind: value.line, value, shape });
   }
   return lines;

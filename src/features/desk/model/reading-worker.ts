@@ -1,4 +1,4 @@
-import { readNet } from '#shared/compute/read-net.ts';
+import { createNetReader } from '#shared/compute/net-reader.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
@@ -7,9 +7,10 @@ export type ReadingQuestion = { readonly revision: number; readonly document: Fl
 export type ReadingAnswer = { readonly revision: number; readonly reading: NetReading };
 
 const scope = globalThis as unknown as DedicatedWorkerGlobalScope;
+const reader = createNetReader();
 
 scope.onmessage = (event: MessageEvent<ReadingQuestion>) => {
   const { revision, document } = event.data;
-  const answer: ReadingAnswer = { revision, reading: readNet(document) };
+  const answer: ReadingAnswer = { revision, reading: reader.read(document) };
   scope.postMessage(answer);
 };
