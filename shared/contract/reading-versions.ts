@@ -53,6 +53,9 @@ const ADDED_TO_READING: Omit<NetReading, FirstReading> = {
   netCheck: null,
   doubt: { headLost: null, headPerDrop: null, seepageFactor: null, seepageShares: [] },
   measured: [],
+  profiles: [],
+  exits: [],
+  stability: { heave: [], creep: null },
 };
 const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = { unitsPerPxUp: null, exaggeration: null };
 const ADDED_TO_LINE: Omit<NetReading['lines'][number], FirstLine> = {};

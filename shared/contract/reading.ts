@@ -4,6 +4,7 @@ import { frameReading, soilsReading } from './reading-frame.ts';
 import { measuredReading } from './reading-measured.ts';
 import { netCheckReading } from './reading-net-check.ts';
 import { phreaticReading } from './reading-phreatic.ts';
+import { exitReading, profileReading, stabilityReading } from './reading-quantities.ts';
 
 /**
  * What `readNet` returns and the schedule, the title block, the API and the command line show. Heads and
@@ -177,5 +178,10 @@ export const netReading = z.object({
   /** The check of the net's own drawing; null without a set-out net. */
   netCheck: z.nullable(netCheckReading),
   doubt: quantityDoubt,
+  /** What was read along each profile, in their order. */
+  profiles: z.array(profileReading),
+  /** The cells at which water leaves; none while unfinished. */
+  exits: z.array(exitReading),
+  stability: stabilityReading,
 });
 export type NetReading = z.infer<typeof netReading>;

@@ -1,0 +1,68 @@
+import type { SheetPx } from '#shared/compute/frames.ts';
+import { straddlesWall } from '#shared/compute/net/hand-rule.ts';
+import { type LieOfPlace, lieOf } from '#shared/compute/net/lie-of-place.ts';
+import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
+import { fieldAt, handAt } from '#shared/compute/net/two-readings.ts';
+
+type Said = { readonly code: string; readonly text: string };
+
+/** The head at a place of a net that need not be a reading point. */
+export type PlaceHead =
+  | {
+      readonly status: 'read';
+      /** Document length unit above the datum. */
+      readonly totalHead: number;
+      /** (∂h/∂offset, ∂h/∂elevation); null where the field could not be solved. */
+      readonly gradient: readonly [number, number] | null;
+      readonly doubtful: Said | null;
+    }
+  | { readonly status: 'abovePhreatic' }
+  | ({ readonly status: 'withheld' } & Said);
+
+/** Reads the head at any place in working pixels. */
+export type HeadAtPlace = (at: SheetPx) => PlaceHead;
+
+const ON_THIN_WALL: Said = {
+  code: 'onThinWall',
+  text: 'The place lies on a thin wall, nearer than the tracing can tell its two sides apart.',
+};
+const BY_HAND: Said = {
+  code: 'byHandOnly',
+  text: 'The field could not be solved here: the figure is by hand’s rule.',
+};
+
+/**
+ * The head at a place in working pixels by the same rules as at a reading point: by the field between the lines, by
+ * hand's rule where the field could not be solved, nothing above the phreatic line, outside the net or inside a body.
+ */
+export function headAtPlace(at: SheetPx, ground: ReadingGround): PlaceHead {
+  const lie = lieOf(at, ground);
+  if (lie.in === 'air') return { status: 'abovePhreatic' };
+  if (lie.in === 'nothing') return { status: 'withheld', code: lie.code, text: lie.text };
+  const field = fieldAt(at, lie, ground);
+  const found = field ?? handAt(at, lie, ground);
+  if ('code' in found) return { status: 'withheld', code: found.code, text: found.text };
+  if (!Number.isFinite(found.totalHead)) {
+    return { status: 'withheld', code: 'notFinite', text: 'The head is too large to be worked out.' };
+  }
+  return {
+    status: 'read',
+    totalHead: found.totalHead,
+    gradient: field !== null && 'gradient' in field ? finitePair(field.gradient) : null,
+    doubtful: doubtAt(at, lie, ground, field === null),
+  };
+}
+
+function doubtAt(
+  at: SheetPx,
+  lie: Extract<LieOfPlace, { in: 'strip' }>,
+  ground: ReadingGround,
+  byHand: boolean,
+): Said | null {
+  if (straddlesWall(ground.strips, lie.strip, at, ground.walls, ground.slack)) return ON_THIN_WALL;
+  return byHand ? BY_HAND : null;
+}
+
+function finitePair(pair: readonly [number, number]): readonly [number, number] | null {
+  return pair.every((part) => Number.isFinite(part)) ? pair : null;
+}
