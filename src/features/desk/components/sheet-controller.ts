@@ -65,6 +65,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       draftId: state.draft?.lineId ?? null,
       hiddenKinds: state.hiddenKinds,
       notes: options.notes(),
+      guides: state.guides,
       map: host.map(),
       readOnly: state.readOnly,
       zoom: zoom(),
@@ -166,6 +167,7 @@ function looksDiffer(a: DeskState, b: DeskState): boolean {
     a.draft !== b.draft ||
     a.tool !== b.tool ||
     a.hiddenKinds !== b.hiddenKinds ||
+    a.guides !== b.guides ||
     a.readOnly !== b.readOnly
   );
 }

@@ -3,6 +3,7 @@ import type { DocumentEntity, FlowNetDocument, LineKind, SheetPoint } from '#sha
 import type { ChangesDto, OpOutcome } from '#shared/contract/nets.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { LocalOp } from './document-ops.ts';
+import type { GuideOwner, Guides, GuidesByOwner } from './guides.ts';
 import type { DeskIntent } from './intents.ts';
 import type { ReadingPort } from './reading-port.ts';
 import type { Selection } from './selection.ts';
@@ -48,6 +49,8 @@ export type DeskState = {
   readonly selection: Selection;
   readonly pointerAt: SheetPoint | null;
   readonly hiddenKinds: readonly HideableKind[];
+  /** What is shown over the sheet besides the net. */
+  readonly guides: GuidesByOwner;
   readonly history: { readonly undoLabel: string | null; readonly redoLabel: string | null };
   readonly draft: Draft | null;
   /** Entities as they look while something is being dragged and is not let go yet. */
@@ -70,6 +73,8 @@ export type DeskActions = {
   setDraft(draft: Draft | null): void;
   setPreview(preview: Readonly<Record<string, DocumentEntity>>): void;
   setHidden(kinds: readonly HideableKind[]): void;
+  /** Shows guides over the sheet, or takes an owner's away with null. */
+  setGuides(owner: GuideOwner, guides: Guides | null): void;
   setReadOnly(readOnly: boolean): void;
   setNotice(notice: string | null): void;
   /** Takes the server's changes in; never over changes of ours that are under way. */

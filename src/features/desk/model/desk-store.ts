@@ -12,6 +12,7 @@ import type {
   Draft,
   RunResult,
 } from './desk-state.ts';
+import { withGuides } from './guides.ts';
 import type { DeskIntent } from './intents.ts';
 import { createListeners } from './listeners.ts';
 import { reopenedLine } from './reopened-line.ts';
@@ -32,6 +33,7 @@ function firstState(opened: Opened, options: DeskStoreOptions): DeskState {
     selection: NO_SELECTION,
     pointerAt: null,
     hiddenKinds: [],
+    guides: {},
     history: { undoLabel: null, redoLabel: null },
     draft: null,
     preview: {},
@@ -106,6 +108,8 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     setPointer: (pointerAt) => store.setState({ pointerAt }),
     setDraft: (draft) => store.setState({ draft: keptDraft(draft, store.getState().document) }),
     setPreview: (preview) => store.setState({ preview }),
+    setGuides: (owner, guides) =>
+      store.setState({ guides: withGuides(store.getState().guides, owner, guides) }),
     setHidden: (hiddenKinds) => store.setState({ hiddenKinds }),
     setReadOnly: (readOnly) => store.setState({ readOnly, draft: null, preview: {}, tool: 'select' }),
     setNotice: (notice) => store.setState({ notice }),

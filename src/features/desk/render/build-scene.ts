@@ -5,8 +5,10 @@ import type { DocumentEntity, FlowNetDocument, SheetPoint, TracedLine } from '#s
 import type { NetReading } from '#shared/contract/reading.ts';
 import { fixedText, plainText } from '#shared/text/number-text.ts';
 import type { HideableKind } from '../model/desk-state.ts';
+import type { GuidesByOwner } from '../model/guides.ts';
 import type { Selection } from '../model/selection.ts';
 import type { SheetFrame } from '../model/viewport.ts';
+import { guideItems } from './guide-items.ts';
 import { COLOURS, lookOf, tracedLook, unfinishedLook } from './line-look.ts';
 import { placeWords } from './place-words.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
@@ -28,6 +30,8 @@ export type SceneInput = {
   readonly draftId: string | null;
   readonly hiddenKinds: readonly HideableKind[];
   readonly notes: readonly NoteBalloon[];
+  /** What explains or compares, over and under the net. */
+  readonly guides: GuidesByOwner;
   readonly map: SectionMap | null;
   readonly readOnly: boolean;
   readonly zoom: number;
@@ -45,9 +49,12 @@ export function buildScene(input: SceneInput): SceneItem[] {
   const shown = shownEntities(input);
   const lines = shown.flatMap((entity) => lineItem(entity, input));
   lines.sort((a, b) => Number(a.strong) - Number(b.strong));
+  const guides = guideItems(input.guides);
   const items = [
     ...frameItem(input.frame),
+    ...guides.under,
     ...lines,
+    ...guides.over,
     ...labelItems(lines, input),
     ...shown.flatMap((entity) => pointItem(entity, input)),
     ...handleItems(shown, input),

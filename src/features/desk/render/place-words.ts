@@ -29,7 +29,7 @@ const BALLOON_OFFSETS = [215, 325, 180, 0, 145, 35, 270, 90].map((degrees) => {
  * notes, then the heads at the lines' ends, which can give way farthest. `zoom`: screen pixels per sheet pixel.
  */
 export function placeWords(items: readonly SceneItem[], zoom: number): SceneItem[] {
-  const marks = items.filter((item): item is SceneMark => item.shape !== 'line');
+  const marks = items.filter((item): item is SceneMark => item.shape !== 'line' && item.shape !== 'area');
   const points = marks.filter((mark) => mark.shape === 'knownPoint' || mark.shape === 'readingPoint');
   const taken: Rect[] = points.map(({ at }) =>
     rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX),
@@ -44,7 +44,9 @@ export function placeWords(items: readonly SceneItem[], zoom: number): SceneItem
   }
   return items.map((item) => {
     const offsetPx = offsets.get(item.id);
-    return offsetPx === undefined || item.shape === 'line' ? item : { ...item, offsetPx };
+    return offsetPx === undefined || item.shape === 'line' || item.shape === 'area'
+      ? item
+      : { ...item, offsetPx };
   });
 }
 

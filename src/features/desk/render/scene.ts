@@ -1,4 +1,5 @@
 import type { SheetPoint } from '#shared/contract/document.ts';
+import type { AreaLook } from './guide-look.ts';
 import type { LineLook } from './line-look.ts';
 
 /** A line of the picture, in sheet pixels. */
@@ -35,7 +36,16 @@ export type SceneMark = {
   readonly offsetPx: readonly [number, number];
 };
 
-export type SceneItem = SceneLine | SceneMark;
+/** Tinted ground: closed outlines in sheet pixels. */
+export type SceneArea = {
+  readonly id: string;
+  readonly shape: 'area';
+  readonly outlines: readonly (readonly SheetPoint[])[];
+  readonly look: AreaLook;
+  readonly strong: false;
+};
+
+export type SceneItem = SceneLine | SceneMark | SceneArea;
 
 /** Receives the difference between two scenes. */
 export type SceneSink = {
@@ -50,6 +60,10 @@ export function sameItem(a: SceneItem, b: SceneItem): boolean {
   if (a.shape !== b.shape || a.strong !== b.strong) return false;
   if (a.shape === 'line' || b.shape === 'line') {
     return a.shape === 'line' && b.shape === 'line' && a.points === b.points && sameLook(a.look, b.look);
+  }
+  if (a.shape === 'area' || b.shape === 'area') {
+    const same = a.shape === 'area' && b.shape === 'area' && a.outlines === b.outlines;
+    return same && a.look.colour === b.look.colour && a.look.alpha === b.look.alpha;
   }
   return (
     a.at[0] === b.at[0] &&

@@ -31,6 +31,7 @@ function inputOf(changes: Partial<SceneInput> = {}): SceneInput {
     draftId: null,
     hiddenKinds: [],
     notes: [],
+    guides: {},
     map: null,
     readOnly: false,
     zoom: 1,
@@ -168,7 +169,7 @@ describe('words on the sheet', () => {
   });
   const offsetOf = (items: readonly SceneItem[], id: string) => {
     const item = items.find((each) => each.id === id);
-    return item === undefined || item.shape === 'line' ? undefined : item.offsetPx;
+    return item !== undefined && 'offsetPx' in item ? item.offsetPx : undefined;
   };
 
   it('stand below their lines and cover no other label', () => {
@@ -179,7 +180,7 @@ describe('words on the sheet', () => {
     expect(offsetOf(items, '0')).toEqual([0, 16]);
     const boxes = items.map((item) => {
       const [dx, dy] = offsetOf(items, item.id) ?? [0, 0];
-      return item.shape === 'line' ? { x: 0, y: 0 } : { x: item.at[0] + dx, y: item.at[1] + dy };
+      return 'at' in item ? { x: item.at[0] + dx, y: item.at[1] + dy } : { x: 0, y: 0 };
     });
     for (let i = 0; i < boxes.length; i += 1) {
       for (let j = 0; j < i; j += 1) {
@@ -201,5 +202,48 @@ describe('words on the sheet', () => {
     const one = placeWords(labels, 1);
     const other = placeWords([...labels].reverse(), 1);
     for (const { id } of labels) expect(offsetOf(one, id)).toEqual(offsetOf(other, id));
+  });
+});
+
+describe('guides over the sheet', () => {
+  const corner: Array<[number, number]> = [
+    [0, 0],
+    [50, 0],
+    [50, 50],
+  ];
+  const guides = {
+    explanation: {
+      areas: [{ id: 'strip', tone: 'strip' as const, outlines: [corner] }],
+      lines: [{ id: 'before', tone: 'way' as const, points: corner }],
+      marks: [],
+    },
+    computedNet: {
+      areas: [],
+      lines: [{ id: '1', tone: 'computedFlowLine' as const, points: corner }],
+      marks: [],
+    },
+  };
+
+  it('lie under the net when they tint or compare, over it when they explain', () => {
+    const ids = buildScene(inputOf({ guides })).map(({ id }) => id);
+    const placeOf = (id: string) => ids.indexOf(id);
+    expect(placeOf('explanation area strip')).toBeLessThan(placeOf(LINE_A));
+    expect(placeOf('computedNet line 1')).toBeLessThan(placeOf(LINE_A));
+    expect(placeOf('computedNet line 1')).toBeGreaterThanOrEqual(0);
+    expect(placeOf('explanation line before')).toBeGreaterThan(placeOf(LINE_B));
+  });
+
+  it('are painted again only when they have changed', () => {
+    const { sink, told } = recordingSink();
+    const input = inputOf({ guides });
+    const before = buildScene(input);
+    diffScene([], before, sink);
+    told.length = 0;
+    diffScene(before, buildScene({ ...input }), sink);
+    expect(told).toEqual([]);
+    const strip = { ...guides.explanation.areas[0]!, outlines: [[...corner].reverse()] };
+    const moved = { ...guides, explanation: { ...guides.explanation, areas: [strip] } };
+    diffScene(before, buildScene({ ...input, guides: moved }), sink);
+    expect(told).toEqual(['change explanation area strip']);
   });
 });
