@@ -205,7 +205,7 @@ export const soil = z.object({
 /** What the engineer counted on the drawing. One for each net. */
 export const netCount = z.object({
   kind: z.literal('netCount'),
-  /** Stated number of drops Nd from headwater to outlet; null until stated. */
+  /** Stated number of drops Nd from the headwater to the outlet, of several the lowest; null until stated. */
   drops: z.nullable(positive),
   /** Stated number of channels Nf; null = counted from the traced flow lines. */
   channels: z.nullable(positive),

@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { readNet } from '#shared/compute/read-net.ts';
 import { netReading } from '#shared/contract/reading.ts';
@@ -223,6 +224,88 @@ describe('water that parts to two sides', () => {
       canal().map((line) => (line.through[0]![0] === 3.2 ? { ...line, head } : line));
     expect(gravesOf(read(typed(8)))).toEqual([]);
     expect(gravesOf(read(typed(5.5)))).toContain('typedOutOfOrder');
+  });
+});
+
+describe('water that parts, with any number of lines on its two sides', () => {
+  const side = fc.record({
+    lines: fc.integer({ min: 1, max: 6 }),
+    part: fc.double({ min: 0.1, max: 1, noNaN: true }),
+  });
+  /** Uprights evenly between two offsets, both left out. */
+  const uprights = (from: number, to: number, count: number) =>
+    Array.from({ length: count }, (_, i) => upright(from + ((to - from) * (i + 1)) / (count + 1)));
+
+  it('falls by one drop from line to line on each, and ends on the part drop of its outlet', () => {
+    fc.assert(
+      fc.property(side, side, (west, east) => {
+        const dropsTo = ({ lines, part }: typeof west) => 1 + lines + part;
+        const drops = Math.max(dropsTo(west), dropsTo(east));
+        const lines: SketchedLine[] = [
+          ...ground,
+          {
+            line: 'impervious',
+            through: [
+              [0, 4],
+              [5.5, 4],
+            ],
+          },
+          {
+            line: 'impervious',
+            through: [
+              [6.5, 4],
+              [12, 4],
+            ],
+          },
+          {
+            line: 'submergedFace',
+            water: 'headwater',
+            through: [
+              [5.5, 4],
+              [6.5, 4],
+            ],
+          },
+          {
+            line: 'drain',
+            name: 'West',
+            head: 20 - dropsTo(west),
+            through: [
+              [0, 0],
+              [0, 4],
+            ],
+          },
+          {
+            line: 'drain',
+            name: 'East',
+            head: 20 - dropsTo(east),
+            through: [
+              [12, 0],
+              [12, 4],
+            ],
+          },
+          {
+            line: 'equipotential',
+            through: [
+              [4.5, 4],
+              [4.7, 2.8],
+              [6, 2.2],
+              [7.3, 2.8],
+              [7.5, 4],
+            ],
+          },
+          ...uprights(4.2, 0, west.lines),
+          ...uprights(7.8, 12, east.lines),
+        ];
+        const reading = readNet(sketchedNet(lines, { headwater: 20, tailwater: null, drops }));
+        expect(gravesOf(reading)).toEqual([]);
+        const counted = reading.lines.filter(({ source }) => source === 'counted').map((line) => line.drops);
+        const along = ({ lines: count }: typeof west) => Array.from({ length: count }, (_, i) => i + 2);
+        expect(counted).toEqual([1, ...along(west), ...along(east)]);
+        for (const outlet of reading.quantities.outlets)
+          expect(outlet.drops).toBeCloseTo(dropsTo(outlet.label === 'West' ? west : east), 6);
+      }),
+      { numRuns: 25 },
+    );
   });
 });
 
