@@ -1,6 +1,7 @@
 import { lineText } from '#client/text/desk-forms.ts';
+import { measuredText } from '#client/text/measured.ts';
 import { savingText as text } from '#client/text/saving.ts';
-import type { DocumentEntity } from '#shared/contract/document.ts';
+import type { DocumentEntity, EntityOf } from '#shared/contract/document.ts';
 import { fixedText } from '#shared/text/number-text.ts';
 
 export interface ConflictFact {
@@ -36,9 +37,19 @@ function wordsOf(value: DocumentEntity): Words {
         [text.facts.water]: value.water ? lineText.waters[value.water] : '–',
         [text.facts.head]: figure(value.head),
         [text.facts.drops]: figure(value.drops),
+        [text.facts.origin]: value.origin,
       };
     case 'readingPoint':
-      return { [text.facts.name]: value.name, [text.facts.place]: placeWords(value.place) };
+      return {
+        [text.facts.name]: value.name,
+        [text.facts.place]: placeWords(value.place),
+        [text.facts.measured]: measuredWords(value.measured),
+        [text.facts.tip]: figure(value.elevationPlusMinus),
+      };
+    case 'soil':
+      return { ...memberWords(value), [text.facts.places]: value.places.map(place).join('; ') || '–' };
+    case 'profile':
+      return { ...memberWords(value), [text.facts.places]: profileWords(value.place) };
     case 'knownPoint':
       return {
         [text.facts.name]: value.name,
@@ -54,6 +65,18 @@ function wordsOf(value: DocumentEntity): Words {
 
 function placeWords(at: Extract<DocumentEntity, { kind: 'readingPoint' }>['place']): string {
   return at.on === 'sheet' ? place(at.at) : text.facts.typedPlace(at.offset, at.elevation);
+}
+
+function measuredWords(measured: EntityOf<'readingPoint'>['measured']): string {
+  if (measured === null) return '–';
+  const { value, as, plusMinus, on } = measured;
+  const figures = plusMinus === null ? String(value) : `${value} ± ${plusMinus}`;
+  return [measuredText.kinds[as], figures, on].filter(Boolean).join(', ');
+}
+
+function profileWords(at: EntityOf<'profile'>['place']): string {
+  if (at.on === 'sheet') return at.points.map(place).join('; ');
+  return (at.on === 'grid' ? at.corners : at.points).map(([x, z]) => text.facts.typedPlace(x, z)).join('; ');
 }
 
 /** Levels, permeability, count and set-out: their members are the figures themselves. */
