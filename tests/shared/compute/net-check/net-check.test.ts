@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { ExactNet } from '#shared/compute/exact/exact-net.ts';
 import { netCheckOf } from '#shared/compute/net-check/net-check.ts';
@@ -5,6 +6,7 @@ import { questionNetCheck } from '#shared/compute/net-check/net-check-findings.t
 import { readNet } from '#shared/compute/read-net.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import { type NetCheckReading, netCheckReading } from '#shared/contract/reading-net-check.ts';
+import { arbitraryDocument } from '#tests/support/arbitrary-document.ts';
 import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { cellsOfDocument, checkInputsOf, checkOfDocument } from '#tests/support/exact-nets/exact-cells.ts';
 import { exactNetDocument, type Tracing } from '#tests/support/exact-nets/exact-net-document.ts';
@@ -320,15 +322,34 @@ it('lists the faults by their effect, the greatest first', () => {
   expect(sizes).toEqual([...sizes].sort((a, b) => b - a));
 });
 
-it('costs no exception for lines drawn at random', () => {
-  const wild = withLines(drawn(pile), 'flowLine', (value, i) => ({
-    ...value,
-    points: value.points.map(([x, y], k): [number, number] => [
-      x + ((i * 977 + k * 613) % 400),
-      y + ((k * 331) % 300),
-    ]),
-  }));
-  const check = checkOfDocument(wild);
-  expect(netCheckReading.parse(check)).toEqual(check);
-  expect(cellsOfDocument(wild).net.rails.length).toBeGreaterThan(0);
+describe('whatever the document', () => {
+  it('is answered, and the answer keeps to its schema', () => {
+    fc.assert(
+      fc.property(arbitraryDocument(), (document) => {
+        const { netCheck } = readNet(document);
+        if (netCheck !== null) netCheckReading.parse(netCheck);
+      }),
+      { numRuns: 100 },
+    );
+  });
+
+  it('is answered for flow lines that wander', () => {
+    const wild = withLines(drawn(pile), 'flowLine', (value, i) => ({
+      ...value,
+      points: value.points.map(([x, y], k): [number, number] => [
+        x + ((i * 977 + k * 613) % 400),
+        y + ((k * 331) % 300),
+      ]),
+    }));
+    const check = checkOfDocument(wild);
+    expect(netCheckReading.parse(check)).toEqual(check);
+    expect(cellsOfDocument(wild).net.rails.length).toBeGreaterThan(0);
+  });
+
+  it('is answered for a stated accuracy of nothing, or wider than the sheet', () => {
+    for (const tracingAccuracyPx of [0, 1e6]) {
+      const document = changed(drawn(pile), 'netCount', (count) => ({ ...count, tracingAccuracyPx }));
+      expect(netCheckReading.parse(checkOfDocument(document)).faults).toEqual([]);
+    }
+  });
 });
