@@ -3,10 +3,13 @@ import type { BoundarySide, QuadraticMesh } from '#shared/compute/independent/qu
 /** Sides of a mesh that follow one another round its edge, the section to their left. */
 export type BoundaryLoop = readonly BoundarySide[];
 
-/** All loops of sides, the one round the outside (of the greatest area) first. */
-export function boundaryLoops(mesh: QuadraticMesh): BoundaryLoop[] {
+/** Part of the greatest loop's area below which a loop encloses none: walls of no thickness. */
+const NO_AREA = 1e-9;
+
+/** All loops of sides: those round a part of the mesh, and those round what is left out within (walls among them). */
+export function boundaryLoops(mesh: QuadraticMesh): { outer: BoundaryLoop[]; inner: BoundaryLoop[] } {
   const byStart = new Map(mesh.sides.map((side) => [side.nodes[0], side]));
-  const loops: BoundarySide[][] = [];
+  const loops: Array<{ loop: BoundaryLoop; area: number }> = [];
   while (byStart.size > 0) {
     const loop: BoundarySide[] = [];
     let next = byStart.values().next().value;
@@ -15,17 +18,20 @@ export function boundaryLoops(mesh: QuadraticMesh): BoundaryLoop[] {
       byStart.delete(next.nodes[0]);
       next = byStart.get(next.nodes[2]);
     }
-    loops.push(loop);
+    loops.push({ loop, area: areaOf(mesh, loop) });
   }
-  const areas = new Map(loops.map((loop) => [loop, areaOf(mesh, loop)]));
-  return loops.sort((a, b) => areas.get(b)! - areas.get(a)!);
+  const least = NO_AREA * loops.reduce((most, { area }) => Math.max(most, area), 0);
+  const ofKind = (isOuter: boolean) =>
+    loops.filter(({ area }) => area > least === isOuter).map(({ loop }) => loop);
+  return { outer: ofKind(true), inner: ofKind(false) };
 }
 
 function areaOf({ x, y }: QuadraticMesh, loop: BoundaryLoop): number {
+  const [x0, y0] = [x[loop[0]!.nodes[0]]!, y[loop[0]!.nodes[0]]!];
   let twice = 0;
-  for (const {
-    nodes: [a, , b],
-  } of loop)
-    twice += x[a]! * y[b]! - x[b]! * y[a]!;
+  for (const { nodes } of loop) {
+    const [a, b] = [nodes[0], nodes[2]];
+    twice += (x[a]! - x0) * (y[b]! - y0) - (x[b]! - x0) * (y[a]! - y0);
+  }
   return twice / 2;
 }

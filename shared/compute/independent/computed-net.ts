@@ -39,9 +39,10 @@ export function computedNet(solution: SectionSolution, drops: number, countedIn 
   if (stream === null || !(step > 0))
     return { drops: whole, dropHead, equipotentials, channels: null, flowLines: [] };
   const [low, high] = rangeOf(stream.values);
-  const channels = (high - low) / step;
-  // A flow line that falls on the boundary to rounding is the boundary.
-  const inner = Math.min(MOST_CHANNELS, Math.ceil(channels - 1e-6) - 1);
+  const channels = solution.inflow / step;
+  // A flow line that falls on the boundary to rounding is the boundary. Where the mesh is cut at a drain inside the
+  // section, ψ goes over a wider range than the flow.
+  const inner = Math.min(MOST_CHANNELS, Math.ceil((high - low) / step - 1e-6) - 1);
   const flowLines = Array.from({ length: Math.max(0, inner) }, (_, i) =>
     contour(stream.mesh, stream.values, low + (i + 1) * step),
   );
