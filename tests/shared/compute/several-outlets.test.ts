@@ -4,6 +4,7 @@ import { readNet } from '#shared/compute/read-net.ts';
 import { netReading } from '#shared/contract/reading.ts';
 import { apronDrainDocument, apronDrainNet } from '#tests/support/exact-nets/apron-drain-net.ts';
 import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
+import { drawnCarelessly } from '#tests/support/exact-nets/redrawn.ts';
 import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
 import { type SketchedLine, sketchedNet } from '#tests/support/exact-nets/sketched-net.ts';
 
@@ -78,6 +79,25 @@ describe.each([
     expect(same.points.map(({ totalHead }) => totalHead)).toEqual(
       reading.points.map(({ totalHead }) => totalHead),
     );
+  });
+});
+
+describe('a drain below the tailwater, carelessly traced', () => {
+  const net = apronDrainNet({ tailwater: 100.2, drainHead: 98.25 });
+  // At the edges of the floor the gradient is endless, and a pixel of tracing is a good part of a drop.
+  const isAtEdge = ([x]: readonly [number, number]) => Math.abs(Math.abs(x) - 10) < 0.6;
+
+  it.each([4, 20])('with gaps of up to %i px is read right or not at all', (gapPx) => {
+    for (let seed = 1; seed <= 4; seed += 1) {
+      const places = net.places(25, seededRandom(seed)).filter((at) => !isAtEdge(at));
+      const readings = places.map((at) => ({ at, clicked: true }));
+      const careful = apronDrainDocument(net, { jitterPx: 1.5, seed, readings });
+      readNet(drawnCarelessly(careful, gapPx, seed)).points.forEach((point, i) => {
+        if (point.totalHead === null) return;
+        const error = Math.abs(point.totalHead - net.headAt(...places[i]!)) / 0.5;
+        expect(error, `seed ${seed}, ${places[i]}: ${point.explanation}`).toBeLessThan(0.25);
+      });
+    }
   });
 });
 

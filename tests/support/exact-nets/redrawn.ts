@@ -1,4 +1,4 @@
-import type { FlowNetDocument, VersionedEntity } from '#shared/contract/document.ts';
+import type { FlowNetDocument, SheetPoint, VersionedEntity } from '#shared/contract/document.ts';
 import { entityIdOf } from '#tests/support/exact-nets/exact-net-document.ts';
 import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
 
@@ -44,4 +44,30 @@ export function withMoreVertices(document: FlowNetDocument): FlowNetDocument {
       return { ...entity, value: { ...entity.value, points } };
     }),
   );
+}
+
+/** Every line with a third of its vertices, stopping short of or running past its end by up to `gapPx`, some the other way round. */
+export function drawnCarelessly(document: FlowNetDocument, gapPx: number, seed: number): FlowNetDocument {
+  const random = seededRandom(seed);
+  return withEntities(
+    document,
+    Object.values(document.entities).map((entity) => {
+      if (entity.value.kind !== 'line') return entity;
+      const all = entity.value.points;
+      const points = all.filter((_, i) => i === 0 || i === all.length - 1 || i % 3 === 0);
+      const last = points.length - 1;
+      points[0] = moved(points[0]!, points[1]!, (2 * random() - 1) * gapPx);
+      points[last] = moved(points[last]!, points[last - 1]!, (2 * random() - 1) * gapPx);
+      return { ...entity, value: { ...entity.value, points: random() < 0.5 ? points : points.reverse() } };
+    }),
+  );
+}
+
+/** An end moved along its line, outwards for a positive distance in pixels. */
+function moved(end: SheetPoint, before: SheetPoint, distance: number): SheetPoint {
+  const length = Math.hypot(end[0] - before[0], end[1] - before[1]);
+  return [
+    end[0] + ((end[0] - before[0]) * distance) / length,
+    end[1] + ((end[1] - before[1]) * distance) / length,
+  ];
 }
