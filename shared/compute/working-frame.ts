@@ -110,11 +110,25 @@ export function tracesInWorkingFrame(document: FlowNetDocument, frame: WorkingFr
     const [x, y] = frame.toWorking(place);
     return [x, y];
   };
-  const entities = Object.values(document.entities).map((entity) => ({
-    ...entity,
-    value: moved(entity.value, move),
-  }));
-  return { ...document, entities: Object.fromEntries(entities.map((entity) => [entity.id, entity])) };
+  const entities = Object.entries(document.entities).map(
+    ([id, entity]) => [id, { ...entity, value: movedOnce(entity.value, frame.matrix, move) }] as const,
+  );
+  return { ...document, entities: Object.fromEntries(entities) };
+}
+
+/** Kept as long as the value is: a line that was not touched is the same in the same frame. */
+const kept = new WeakMap<DocumentEntity, { readonly matrix: LinearMap; readonly moved: DocumentEntity }>();
+
+function movedOnce(
+  value: DocumentEntity,
+  matrix: LinearMap,
+  move: (place: SheetPoint) => SheetPoint,
+): DocumentEntity {
+  const known = kept.get(value);
+  if (known !== undefined && nearlySame(known.matrix, matrix, 0)) return known.moved;
+  const there = moved(value, move);
+  kept.set(value, { matrix, moved: there });
+  return there;
 }
 
 function moved(value: DocumentEntity, move: (place: SheetPoint) => SheetPoint): DocumentEntity {

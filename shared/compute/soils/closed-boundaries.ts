@@ -18,6 +18,9 @@ export type ClosedBoundary = { readonly points: readonly Pair[]; readonly openAt
 /** Part of a boundary's length over which its direction at an end is taken. */
 const END_PART = 0.1;
 
+/** An end steeper than this, as the sine of its slope, is no ground and no base. */
+const STEEP = 0.5;
+
 /**
  * Carries the ends of soil boundaries on: to another line, or to the boundary's own other end, within `reach`, the gap of
  * a tracing error; else straight on to the first line it meets or to the edge of `frame`. An end that is carried farther
@@ -42,6 +45,31 @@ export function closeBoundary(
     points: [...added(head), ...points, ...added(tail)],
     openAt: [head, tail].flatMap((end) => (end?.isOpen ? [end.from] : [])),
   };
+}
+
+/**
+ * What joins the ends of a line that bounds the section to what lies beside them: a short piece to another line within
+ * `reach`; or, where nothing lies on the way, a straight one to the edge of `frame`, so that the two sides of the section
+ * are not one outside. `up`: the section's up; an end that points steeply is the tip of a wall and stays free.
+ */
+export function joinsOf(
+  line: Polyline,
+  lines: readonly Polyline[],
+  frame: Polyline,
+  reach: number,
+  up: Pair,
+): Pair[][] {
+  const near = Math.max(1, END_PART * lengthOf(line));
+  return [
+    carriedOn(firstOf(line), pointAlong(line, near), lines, frame, reach),
+    carriedOn(lastOf(line), pointAlong(line, lengthOf(line) - near), lines, frame, reach),
+  ].flatMap((end) => {
+    if (end === null || end.isOpen) return [];
+    const [dx, dy] = [end.to[0] - end.from[0], end.to[1] - end.from[1]];
+    const size = Math.hypot(dx, dy);
+    const isSteep = size > reach && Math.abs(dx * up[0] + dy * up[1]) > STEEP * size;
+    return isSteep ? [] : [[end.from, end.to]];
+  });
 }
 
 type Carried = { from: Pair; to: Pair; isOpen: boolean } | null;

@@ -54,7 +54,7 @@ export function soilGroundOf(
   impliedRatio: number | null,
 ): SoilGround {
   const list = soilsOf(document, inputs.permeability, impliedRatio);
-  const regions = soilRegionsOf(model.lines, list, model.reach);
+  const regions = soilRegionsOf(model.lines, list, model.reach, frame.map.up);
   const used = usedSoils(model.strips, regions.soilAt, list);
   const { countedIn, cellRatio } = inputs.count;
   const named = countedSoil(list, countedIn);

@@ -1,8 +1,8 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import { type Polyline, polylineOf, verticesOf } from '#shared/compute/geometry/polyline.ts';
+import { type Box, type Polyline, polylineOf, verticesOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
-import { closeBoundary, frameAbout } from '#shared/compute/soils/closed-boundaries.ts';
+import { closeBoundary, frameAbout, joinsOf } from '#shared/compute/soils/closed-boundaries.ts';
 import { type Faces, facesOf } from '#shared/compute/soils/faces.ts';
 import type { Soil, SoilList } from '#shared/compute/soils/soil-list.ts';
 import type { Finding } from '#shared/contract/reading.ts';
@@ -21,16 +21,20 @@ const MERGE_PX = 0.5;
 
 /**
  * Parts the section along its soil boundaries, impervious boundaries, faces and ground, and gives each region the soil
- * whose place lies in it. All in the frame of `lines` and of the soils' places; `reach` is the gap of a tracing error.
+ * whose place lies in it. All in the frame of `lines` and of the soils' places; `reach` is the gap of a tracing error, `up` the
+ * section's up (unit vector).
  */
 export function soilRegionsOf(
   lines: readonly NetLine[],
   { section, placed }: SoilList,
   reach: number,
+  up: Pair,
 ): SoilRegions {
   const soilLines = linesOfKind(lines, 'soilBoundary');
   const bounding = linesOfKind(lines, 'impervious', 'submergedFace', 'outflowFace', 'ground');
-  const parting = partedBy(soilLines, bounding, reach);
+  const places = placed.flatMap((soil) => soil.places);
+  const frame = frameAbout([...lines.map(({ shape }) => shape.box), ...places.map(boxOfPlace)]);
+  const parting = partedBy(soilLines, bounding, frame, reach, up);
   const owners = parting.faces === null ? new Map<number, Soil>() : ownersOf(parting.faces, placed);
   const { faces } = parting;
   return {
@@ -38,19 +42,31 @@ export function soilRegionsOf(
     boundaries: parting.boundaries,
     findings: [
       ...(placed.length === 0 ? [] : parting.open),
-      ...(faces === null ? [notParted(placed)].flat() : contradictions(faces, placed)),
+      ...(faces === null ? notParted(frame === null ? [] : placed) : contradictions(faces, placed)),
     ],
   };
 }
 
-function partedBy(soilLines: readonly NetLine[], bounding: readonly NetLine[], reach: number) {
-  const frame = frameAbout([...soilLines, ...bounding].map(({ shape }) => shape.box));
+function boxOfPlace([x, y]: Pair): Box {
+  return { minX: x, maxX: x, minY: y, maxY: y };
+}
+
+function partedBy(
+  soilLines: readonly NetLine[],
+  bounding: readonly NetLine[],
+  frame: Polyline | null,
+  reach: number,
+  up: Pair,
+) {
   if (frame === null) return { faces: null, boundaries: [], open: [] };
-  const closed = soilLines.map((line) => {
-    const others = [...soilLines, ...bounding].filter((other) => other !== line).map(({ shape }) => shape);
-    return { line, ...closeBoundary(line.shape, others, frame, reach) };
-  });
-  const chains = [frame, ...bounding.map(({ shape }) => shape)].map(verticesOf);
+  const shapesBut = (line: NetLine) =>
+    [...soilLines, ...bounding].filter((other) => other !== line).map(({ shape }) => shape);
+  const closed = soilLines.map((line) => ({
+    line,
+    ...closeBoundary(line.shape, shapesBut(line), frame, reach),
+  }));
+  const joins = bounding.flatMap((line) => joinsOf(line.shape, shapesBut(line), frame, reach, up));
+  const chains = [...[frame, ...bounding.map(({ shape }) => shape)].map(verticesOf), ...joins];
   return {
     faces: facesOf([...chains, ...closed.map(({ points }) => points)], MERGE_PX),
     boundaries: closed.map(({ points }) => polylineOf(points)).filter((shape) => shape !== null),
