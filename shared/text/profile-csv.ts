@@ -1,0 +1,50 @@
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { ProfileReading, ProfileSample } from '#shared/contract/reading-quantities.ts';
+import { type CsvCell, csvText } from '#shared/text/csv.ts';
+import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+
+/**
+ * A profile as CSV for a stability program: one row for each place in the order of the profile, units in the heads of
+ * the columns, decimal points, figures rounded to a tenth of what a reading can mean. Above the phreatic line the
+ * pressure is 0 and the remark says so; where nothing could be read the cells are empty, never 0, and the remark says
+ * why.
+ */
+export function profileCsv(
+  document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
+  profile: Pick<ProfileReading, 'name' | 'samples'>,
+): string {
+  const units = unitNames(document.unitSystem);
+  const elevation = elevationUnit(document.unitSystem, document.datum);
+  const head: CsvCell[] = [
+    'Profile',
+    `Distance, ${units.length}`,
+    `Offset, ${units.length}`,
+    `Elevation, ${elevation}`,
+    `Total head, ${elevation}`,
+    `Pressure head, ${units.length}`,
+    `Pore pressure, ${units.pressure}`,
+    'r_u',
+    'Remark',
+  ];
+  return csvText([head, ...profile.samples.map((sample) => rowOf(profile.name, sample))]);
+}
+
+function rowOf(name: string, sample: ProfileSample): CsvCell[] {
+  return [
+    name,
+    rounded(sample.distance, 3),
+    rounded(sample.offset, 3),
+    rounded(sample.elevation, 3),
+    rounded(sample.totalHead, 3),
+    rounded(sample.pressureHead, 3),
+    rounded(sample.porePressure, 2),
+    rounded(sample.ru, 3),
+    [sample.reason?.text, sample.doubtful?.text].filter(Boolean).join(' '),
+  ];
+}
+
+function rounded(value: number | null, decimals: number): number | null {
+  if (value === null) return null;
+  const kept = Number(value.toFixed(decimals));
+  return kept === 0 ? 0 : kept;
+}
