@@ -178,6 +178,7 @@ function reasonAgainst(
  * line lies within the cell that goes round it, since its two faces are one place.
  */
 function holdsSingular(sides: CellSides, singular: readonly Pair[], near: number): boolean {
+  if (singular.length === 0) return false;
   const { before, after, left, right } = sides;
   const ring = ringOf([...before, ...right, ...[...after].reverse(), ...[...left].reverse()]);
   if (ring === null) return false;

@@ -50,9 +50,7 @@ export function measureCell(sides: CellSides): CellMeasures {
     along,
     across,
     middle: along[PIECES / 2]!,
-    area: Math.abs(
-      areaOf([...sides.before, ...sides.right, ...[...sides.after].reverse(), ...[...sides.left].reverse()]),
-    ),
+    area: Math.abs(areaOf(sides)),
   };
 }
 
@@ -161,12 +159,18 @@ function towards(from: Pair, to: Pair, by: number): Pair {
   return [from[0] + part * (to[0] - from[0]), from[1] + part * (to[1] - from[1])];
 }
 
-function areaOf(points: readonly Pair[]): number {
-  const [x0, y0] = points[0]!;
+/** Signed area between the four sides, each taken from corner to corner; about a corner, to avoid cancellation. */
+function areaOf({ before, after, left, right }: CellSides): number {
+  const origin = before[0]!;
+  return sweptBy(before, origin) + sweptBy(right, origin) - sweptBy(after, origin) - sweptBy(left, origin);
+}
+
+/** Area that the ray from a place sweeps along a run of points. */
+function sweptBy(points: readonly Pair[], [x0, y0]: Pair): number {
   let twice = 0;
-  for (let i = 1; i + 1 < points.length; i += 1) {
-    const [ax, ay] = points[i]!;
-    const [bx, by] = points[i + 1]!;
+  for (let i = 1; i < points.length; i += 1) {
+    const [ax, ay] = points[i - 1]!;
+    const [bx, by] = points[i]!;
     twice += (ax - x0) * (by - y0) - (bx - x0) * (ay - y0);
   }
   return twice / 2;
