@@ -57,9 +57,9 @@ export function middleValue(values: readonly number[], expected: number): number
 }
 
 /**
- * Standard deviation of ln(B/L) that the tracing accuracy gives a cell: both ends of both mean lengths are off by it,
- * and the four lines of each mean halve that again at best; the whole √2 is not taken off, since neighbouring vertices
- * of one line tremble together. `accuracyPx` in working pixels; dimensionless.
+ * Standard deviation of ln(B/L) that the tracing accuracy σ gives a cell: σ·√(1/L² + 1/B²), as if each mean length were
+ * off by σ. Both its ends are, which makes √2·σ of one line, and the mean over the side takes about as much off again.
+ * `accuracyPx`: σ in working pixels; dimensionless.
  */
 export function tremorOf({ measures }: NetCell, accuracyPx: number): number {
   return accuracyPx * Math.hypot(1 / measures.length, 1 / measures.width);
