@@ -15,6 +15,9 @@ export type HandReading = {
   /** Where the ways arrive, distance along the strip's `beforeShape` and `afterShape`. */
   readonly beforeS: number;
   readonly afterS: number;
+  /** Corners of walls that the ways bend round, from the place on. */
+  readonly beforeCorners: readonly Pair[];
+  readonly afterCorners: readonly Pair[];
 };
 
 /**
@@ -84,5 +87,7 @@ export function readByHand(
     toAfter: after.length,
     beforeS: before.s,
     afterS: after.s,
+    beforeCorners: before.corners,
+    afterCorners: after.corners,
   };
 }

@@ -4,8 +4,11 @@ import { thinned } from '#shared/compute/geometry/thin.ts';
 import { cheapestFirst } from '#shared/compute/net/cheapest-first.ts';
 import { type Effort, seesPlace } from '#shared/compute/net/sight.ts';
 
-/** The shortest way to a line: its length and where on the line it arrives (distance along it). */
-export type WayToLine = { readonly length: number; readonly s: number };
+/**
+ * The shortest way to a line: its length, the corners that it bends round in order, and where on the line it arrives
+ * (distance along it).
+ */
+export type WayToLine = { readonly length: number; readonly s: number; readonly corners: readonly Pair[] };
 
 /**
  * Vertices that may be looked at for one way, so that no maze of walls takes longer than a moment: some thousand looks
@@ -30,13 +33,14 @@ export function wayToLine(
   effort: Effort = { left: MOST_EFFORT },
 ): WayToLine | null {
   const near = nearestOnPolyline(goal, from[0], from[1]);
-  if (seesPlace(from, near.at, walls, slack, effort)) return { length: near.distance, s: near.s };
+  if (seesPlace(from, near.at, walls, slack, effort))
+    return { length: near.distance, s: near.s, corners: [] };
   return wayRoundCorners(from, goal, walls, slack, effort);
 }
 
 /** `rest`: what is left to the goal at least, the distance from its box. */
 type Corner = { at: Pair; rest: number; reached: boolean };
-type Step = { from: Pair; to: Corner; length: number; cost: number };
+type Step = { from: Pair; to: Corner; length: number; cost: number; before: readonly Pair[] };
 
 function wayRoundCorners(
   from: Pair,
@@ -51,23 +55,23 @@ function wayRoundCorners(
   const steps = cheapestFirst<Step>();
   let best: WayToLine | null = null;
   const bestLength = () => best?.length ?? Number.POSITIVE_INFINITY;
-  const goOnFrom = (at: Pair, length: number) => {
+  const goOnFrom = (at: Pair, length: number, round: readonly Pair[]) => {
     const arrival = nearestSeen(at, goal, walls, slack, bestLength() - length, effort);
-    if (arrival !== null) best = { length: length + arrival.length, s: arrival.s };
+    if (arrival !== null) best = { length: length + arrival.length, s: arrival.s, corners: round };
     effort.left -= STEP_EFFORT * corners.length;
     for (const to of corners) {
       if (to.reached) continue;
       const onward = length + Math.hypot(to.at[0] - at[0], to.at[1] - at[1]);
       if (onward + to.rest < bestLength())
-        steps.push({ from: at, to, length: onward, cost: onward + to.rest });
+        steps.push({ from: at, to, length: onward, cost: onward + to.rest, before: round });
     }
   };
-  goOnFrom(from, 0);
+  goOnFrom(from, 0, []);
   for (let step = steps.pop(); step !== null && step.cost < bestLength(); step = steps.pop()) {
     if (effort.left < 0) return null;
     if (step.to.reached || !seesPlace(step.from, step.to.at, walls, slack, effort)) continue;
     step.to.reached = true;
-    goOnFrom(step.to.at, step.length);
+    goOnFrom(step.to.at, step.length, [...step.before, step.to.at]);
   }
   return effort.left < 0 ? null : best;
 }
@@ -87,6 +91,8 @@ function distanceToBox([x, y]: Pair, { box }: Polyline): number {
   return Math.hypot(Math.max(box.minX - x, 0, x - box.maxX), Math.max(box.minY - y, 0, y - box.maxY));
 }
 
+type Arrival = { readonly length: number; readonly s: number };
+
 /** The nearest place on the goal in straight sight, among its nearest place and its vertices. */
 function nearestSeen(
   from: Pair,
@@ -95,7 +101,7 @@ function nearestSeen(
   slack: number,
   limit: number,
   effort: Effort,
-): WayToLine | null {
+): Arrival | null {
   const near = nearestOnPolyline(goal, from[0], from[1]);
   if (near.distance >= limit) return null;
   if (seesPlace(from, near.at, walls, slack, effort)) return { length: near.distance, s: near.s };

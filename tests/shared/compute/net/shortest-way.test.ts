@@ -20,7 +20,12 @@ describe('the shortest way to a line', () => {
     const second = line([10, 20], [10, 400]);
     // From there the second wall's end (10, 20) has to be passed as well.
     const round = Math.hypot(20, 30) + Math.hypot(10, 10) + 10;
-    expect(wayToLine([40, 0], goal, [wall, second], 1)?.length).toBeCloseTo(round, 9);
+    const way = wayToLine([40, 0], goal, [wall, second], 1);
+    expect(way?.length).toBeCloseTo(round, 9);
+    expect(way?.corners).toEqual([
+      [20, 30],
+      [10, 20],
+    ]);
   });
 
   it('takes little effort past an ordinary wall, and in a maze is given up before it takes much', () => {
