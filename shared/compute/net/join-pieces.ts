@@ -31,12 +31,16 @@ export function joinPieces(
 ): { whole: WholeLine[]; findings: Finding[] } {
   const whole: WholeLine[] = traced.map((line) => ({ line, members: [line.id] }));
   const findings: Finding[] = [];
+  const tips = whole.map(({ line }) => tipsOf(line.shape));
   for (let i = 0; i < whole.length; i += 1) {
     for (let j = i + 1; j < whole.length; j += 1) {
-      const joined = joinedPair(whole[i]!, whole[j]!, boundaries, reach);
+      const meeting = meetingTips(tips[i]!, tips[j]!, reach);
+      const joined = meeting && joinedPair(whole[i]!, whole[j]!, meeting, boundaries, reach);
       if (joined === null) continue;
       whole[i] = joined.whole;
+      tips[i] = tipsOf(joined.whole.line.shape);
       whole.splice(j, 1);
+      tips.splice(j, 1);
       findings.push(joinNote(joined.whole.members, joined.at));
       // The longer piece may meet one that was passed over before.
       j = i;
@@ -50,8 +54,8 @@ const FACING_DEG = 30;
 
 /**
  * Pieces of what looks like one equipotential with a gap between them, no longer than the shorter piece: their ends face
- * one another, away from every boundary. `inDoubt`: lines that found no place in the order; a gap beside one of them withholds the figures. Shapes and
- * `reach` in working pixels.
+ * one another, away from every boundary. `inDoubt`: lines that found no place in the order; a gap beside one of them
+ * withholds the figures. Shapes and `reach` in working pixels.
  */
 export function offerToJoin(
   whole: readonly WholeLine[],
@@ -61,21 +65,19 @@ export function offerToJoin(
 ): Finding[] {
   const isFree = ({ at }: Tip) =>
     !boundaries.some((shape) => nearestOnPolyline(shape, ...at).distance <= reach);
-  return whole.flatMap((a, i) =>
-    whole.slice(i + 1).flatMap((b): Finding[] => {
-      const most = Math.min(lengthOf(a.line.shape), lengthOf(b.line.shape));
-      const facing = tipsOf(a.line.shape).find((tip) =>
-        tipsOf(b.line.shape).some((other) => face(tip, other, most) && isFree(tip) && isFree(other)),
+  const ended = whole.map(({ line }) => ({
+    id: line.id,
+    length: lengthOf(line.shape),
+    tips: tipsOf(line.shape),
+  }));
+  return ended.flatMap((a, i) =>
+    ended.slice(i + 1).flatMap((b): Finding[] => {
+      const most = Math.min(a.length, b.length);
+      const facing = a.tips.find((tip) =>
+        b.tips.some((other) => face(tip, other, most) && isFree(tip) && isFree(other)),
       );
       if (facing === undefined) return [];
-      const ids = [a.line.id, b.line.id];
-      return [
-        offer(
-          ids,
-          facing.at,
-          ids.some((id) => inDoubt.has(id)),
-        ),
-      ];
+      return [offer([a.id, b.id], facing.at, inDoubt.has(a.id) || inDoubt.has(b.id))];
     }),
   );
 }
@@ -102,25 +104,27 @@ function offer(ids: readonly string[], at: Pair, withholds: boolean): Finding {
 
 type Tip = { readonly at: Pair; readonly onward: Pair; readonly isFirst: boolean };
 
+/** The two ends by which one piece runs on as the other. */
+function meetingTips(a: readonly Tip[], b: readonly Tip[], reach: number): readonly [Tip, Tip] | null {
+  for (const tipA of a) {
+    for (const tipB of b) if (runsOn(tipA, tipB, reach)) return [tipA, tipB];
+  }
+  return null;
+}
+
 function joinedPair(
   a: WholeLine,
   b: WholeLine,
+  [tipA, tipB]: readonly [Tip, Tip],
   boundaries: readonly Polyline[],
   reach: number,
 ): { whole: WholeLine; at: Pair } | null {
   const value = commonValue(a.line, b.line);
-  if (value === null) return null;
-  for (const tipA of tipsOf(a.line.shape)) {
-    for (const tipB of tipsOf(b.line.shape)) {
-      if (!runsOn(tipA, tipB, reach)) continue;
-      const nearBoundary = boundaries.some((shape) => nearestOnPolyline(shape, ...tipA.at).distance <= reach);
-      const shape = nearBoundary ? null : polylineOf(pointsThrough(a.line.shape, tipA, b.line.shape, tipB));
-      if (shape === null) continue;
-      const line = { ...a.line, value, shape };
-      return { whole: { line, members: [...a.members, ...b.members] }, at: tipA.at };
-    }
-  }
-  return null;
+  const nearBoundary = boundaries.some((shape) => nearestOnPolyline(shape, ...tipA.at).distance <= reach);
+  const shape = nearBoundary ? null : polylineOf(pointsThrough(a.line.shape, tipA, b.line.shape, tipB));
+  if (value === null || shape === null) return null;
+  const line = { ...a.line, value, shape };
+  return { whole: { line, members: [...a.members, ...b.members] }, at: tipA.at };
 }
 
 /** What is typed for both together; null when it contradicts itself. */

@@ -46,7 +46,8 @@ export function regionsOf(heads: readonly HeadLine[], links: readonly NeighbourL
       regions.set(rootOf(key), region);
     }
   }
-  const inOrder = (seen: ReadonlySet<string>) => heads.map(({ id }) => id).filter((id) => seen.has(id));
+  const rank = new Map(heads.map(({ id }, i) => [id, i]));
+  const inOrder = (seen: ReadonlySet<string>) => [...seen].sort((a, b) => rank.get(a)! - rank.get(b)!);
   return [
     ...[...regions.values()].map(({ sides, boundaries: seen }) => ({ sides, boundaries: inOrder(seen) })),
     ...bare,

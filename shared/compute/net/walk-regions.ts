@@ -1,5 +1,5 @@
 import type { HeadLine } from '#shared/compute/net/neighbours.ts';
-import type { FlowRegion } from '#shared/compute/net/regions.ts';
+import type { FlowRegion, LineSide } from '#shared/compute/net/regions.ts';
 
 /** A region with the way by which the walk came into it. */
 export type WalkedRegion = FlowRegion & {
@@ -38,6 +38,9 @@ export function walkRegions(
   const walked = new Map<FlowRegion, WalkedRegion>();
   const place = new Map<string, number>();
   const loops = new Set<string>();
+  const bySide = new Map(
+    regions.flatMap((region) => region.sides.map((side) => [sideKey(side), region] as const)),
+  );
   for (const sources of sourcesInTurn(heads, levels)) {
     const queue = regions
       .filter((region) => !walked.has(region))
@@ -46,7 +49,7 @@ export function walkRegions(
         return source === undefined ? [] : [started(region, null, null, source, walked)];
       });
     for (let here = queue.shift(); here !== undefined; here = queue.shift()) {
-      queue.push(...crossed(here, regions, walked, place, loops));
+      queue.push(...crossed(here, bySide, walked, place, loops));
     }
   }
   const onward = new Set(
@@ -79,7 +82,7 @@ function started(
 /** The regions across the lines of one region, entered for the first time. */
 function crossed(
   here: WalkedRegion,
-  regions: readonly FlowRegion[],
+  bySide: ReadonlyMap<string, FlowRegion>,
   walked: Map<FlowRegion, WalkedRegion>,
   place: Map<string, number>,
   loops: Set<string>,
@@ -88,7 +91,7 @@ function crossed(
   for (const { id, side } of here.sides) {
     if (place.has(id)) continue;
     place.set(id, here.via === null ? 1 : place.get(here.via)! + 1);
-    const beyond = regions.find(({ sides }) => sides.some((each) => each.id === id && each.side !== side));
+    const beyond = bySide.get(sideKey({ id, side: side === 0 ? 1 : 0 }));
     if (beyond === undefined) continue;
     const known = walked.get(beyond);
     if (known === undefined) {
@@ -103,6 +106,10 @@ function crossed(
     }
   }
   return entered;
+}
+
+function sideKey({ id, side }: LineSide): string {
+  return `${side} ${id}`;
 }
 
 /** The region where the walk to a region started. */
