@@ -1,0 +1,93 @@
+import { type DifferencePicture, differencePicture } from '#shared/compute/beside/difference-picture.ts';
+import { type PlacedNet, placedNet } from '#shared/compute/beside/placed-net.ts';
+import { type SheetPx, sectionPt } from '#shared/compute/frames.ts';
+import type { Pair } from '#shared/compute/geometry/predicates.ts';
+import {
+  compareWithIndependent,
+  type IndependentComparison,
+} from '#shared/compute/independent/compare-with-independent.ts';
+import type { SectionOfDocument } from '#shared/compute/independent/section-of-document.ts';
+import type { SectionSolution } from '#shared/compute/independent/section-solution.ts';
+import { readSetOut } from '#shared/compute/set-out.ts';
+import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
+
+/** The steepest place at which water comes out at one boundary. Gradient positive outwards; null without a bound. */
+export type SteepestExit = {
+  readonly id: string;
+  readonly at: SheetPoint;
+  readonly gradient: number | null;
+  /** True when the boundary ends at a floor edge or corner, where the gradient has no bound. */
+  readonly hasSingular: boolean;
+};
+
+/** A traced net beside the independent solution of its section: plain data. Lengths in the document's unit. */
+export type BesideSolution = {
+  readonly comparison: IndependentComparison;
+  /** Greatest less least head of the solution. */
+  readonly headLost: number;
+  readonly hasPermeability: boolean;
+  readonly usesPhreaticLine: boolean;
+  readonly exits: readonly SteepestExit[];
+  readonly net: PlacedNet;
+  readonly picture: DifferencePicture;
+  /** Mass balance: inflow less outflow over the inflow. */
+  readonly imbalance: number;
+  /** Bound of the relative error of the energy; null where the stream function has no single value. */
+  readonly gap: number | null;
+  readonly surfaceMisfit: number | null;
+  readonly nodeCount: number;
+};
+
+/**
+ * Sets the traced net beside the independent solution: heads and seepage compared, the steepest exits, the computed net
+ * and the differences of head over the section, with their places on the sheet. `reading` is that of `document`, and
+ * `section` and `solution` are of it too. Differences are traced minus independent. Null while the section is not set
+ * out. Pure and total.
+ */
+export function besideSolution(
+  document: FlowNetDocument,
+  reading: NetReading,
+  section: SectionOfDocument,
+  solution: SectionSolution,
+): BesideSolution | null {
+  const { map } = readSetOut(document);
+  if (map === null) return null;
+  const toSheet = ([offset, elevation]: Pair): SheetPx => map.toSheet(sectionPt(offset, elevation));
+  const { imbalance, gap, surfaceMisfit, nodeCount } = solution;
+  return {
+    comparison: compareWithIndependent(reading, solution, section.hasPermeability),
+    headLost: solution.greatestHead - solution.leastHead,
+    hasPermeability: section.hasPermeability,
+    usesPhreaticLine: section.usesPhreaticLine,
+    exits: steepestExits(solution, toSheet),
+    net: placedNet(solution, dropsOf(reading), toSheet),
+    picture: differencePicture(document, map, solution),
+    imbalance,
+    gap,
+    surfaceMisfit,
+    nodeCount,
+  };
+}
+
+const USUAL_DROPS = 10;
+
+/** The computed net has as many drops as the traced one, so that the two can be laid over one another. */
+function dropsOf({ quantities }: NetReading): number {
+  return quantities.drops ?? quantities.tracedDrops ?? USUAL_DROPS;
+}
+
+function steepestExits(solution: SectionSolution, toSheet: (place: Pair) => SheetPx): SteepestExit[] {
+  return [...new Set(solution.exits.map(({ id }) => id))].flatMap((id) => {
+    const own = solution.exits.filter((exit) => exit.id === id);
+    const bounded = own.filter(({ gradient }) => gradient !== null);
+    const hasSingular = own.some(({ singular }) => singular);
+    const worst = bounded.reduce(
+      (most, exit) => ((exit.gradient ?? 0) > (most?.gradient ?? 0) ? exit : most),
+      bounded[0] ?? own[0],
+    );
+    if (worst === undefined) return [];
+    const [x, y] = toSheet(worst.at);
+    return [{ id, at: [x, y], gradient: worst.gradient, hasSingular }];
+  });
+}
