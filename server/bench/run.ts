@@ -4,6 +4,7 @@ import type { Bench, BenchRow } from './bench.ts';
 import { firstLoad } from './first-load.ts';
 import { independentSolution } from './independent-bench.ts';
 import { panFrame } from './pan-frame.ts';
+import { fieldSolve, readingError, reread200, wholeNet60 } from './reading-bench.ts';
 import { scheduleApi } from './schedule-api.ts';
 import { tableOf } from './table.ts';
 import { uploadGroupFour, uploadJpeg } from './upload-a1.ts';
@@ -16,6 +17,10 @@ const benches: readonly Bench[] = [
   firstLoad,
   scheduleApi,
   independentSolution,
+  reread200,
+  wholeNet60,
+  fieldSolve,
+  readingError,
 ];
 
 const { values: options } = parseArgs({
