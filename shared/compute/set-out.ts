@@ -84,6 +84,7 @@ function withMap(
   const figures = [
     fit.along,
     fit.up,
+    fit.along / fit.up,
     residual,
     impliedScale,
     ...residuals.flatMap((each) => [each.offset, each.elevation]),

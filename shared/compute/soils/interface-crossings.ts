@@ -91,7 +91,9 @@ function crossingAt(
   const after = sideOf(line.shape, s, s + window, tangent, ground.accuracyPx);
   if (before === null || after === null) return null;
   const law = (line.isFlow ? refractionOfFlow : refractionOfHeads)(k1, k2, tangent.direction);
-  return { lineId: line.id, boundaryId: boundary.id, at, from, to, ...judged(law, before, after, tangent) };
+  const judgement = judged(law, before, after, tangent);
+  if (!Object.values(judgement).every(Number.isFinite)) return null;
+  return { lineId: line.id, boundaryId: boundary.id, at, from, to, ...judgement };
 }
 
 type Side = { readonly alpha: number; readonly tremor: number };

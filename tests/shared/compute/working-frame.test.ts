@@ -166,3 +166,36 @@ describe.each(EXACT_NETS)('an anisotropic section: $name', ({ net, pxPerUnit }) 
     );
   });
 });
+
+describe('a drawing that is stretched upwards', () => {
+  const { net, pxPerUnit } = EXACT_NETS[1]!;
+  const readings = randomReadings(net, 8, 3, 0.1);
+
+  it('reads as the same drawing unstretched', () => {
+    fc.assert(
+      fc.property(fc.double({ min: 0.4, max: 6, noNaN: true }), fc.boolean(), (times, mirrored) => {
+        const plain = exactNetDocument(net, { pxPerUnit, readings, mirrored, turnDeg: 0 });
+        const up = ([x, y]: readonly [number, number]): [number, number] => [x, y * times];
+        const lines = changed(plain, 'line', (value) => ({ ...value, points: value.points.map(up) }));
+        const known = changed(lines, 'knownPoint', (value) => ({ ...value, at: up(value.at) }));
+        const points = changed(known, 'readingPoint', (value) => ({
+          ...value,
+          place: value.place.on === 'sheet' ? { on: 'sheet', at: up(value.place.at) } : value.place,
+        }));
+        const stretched = changed(points, 'setOut', (value) => ({
+          ...value,
+          scales: 'plottingExaggeration' as const,
+        }));
+        const [expected, read] = [readNet(plain), readNet(stretched)];
+        expect(read.setOut.exaggeration).toBeCloseTo(times, 9);
+        const drop = expected.quantities.headPerDrop ?? 1;
+        const heads = figuresOf(expected);
+        figuresOf(read).forEach(({ byHand, byField }, i) => {
+          expect(Math.abs(byHand - heads[i]!.byHand) / drop).toBeLessThan(2e-3);
+          expect(Math.abs(byField - heads[i]!.byField) / drop).toBeLessThan(5e-3);
+        });
+      }),
+      { numRuns: 6 },
+    );
+  });
+});
