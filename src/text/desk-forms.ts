@@ -135,7 +135,7 @@ export const permeabilityText = {
   dipFault: 'The dip lies between −90 and 90 degrees.',
   weightsTitle: 'Weights',
   weightsLead:
-    'For heave, critical gradient and the ratio r_u. Gs and e stand in where the saturated weight is not known.',
+    'For heave, critical gradient and the pore pressure ratio. Gs and e stand in where the saturated weight is not known.',
   weights: {
     saturatedUnitWeight: (unit: string) => `Saturated γ, ${unit}`,
     moistUnitWeight: (unit: string) => `Moist γ, ${unit}`,
