@@ -61,7 +61,7 @@ export function soilGroundOf(
   const counted = named !== null && (used.length === 0 || used.includes(named)) ? named : null;
   const tensors = new Map([list.section, ...list.placed].map((soil) => [soil, tensorIn(soil, frame.map)]));
   const tensorOf = (soil: Soil) => tensors.get(soil) ?? null;
-  const crossings = crossingsOf(model, regions.soilAt, tensorOf, inputs);
+  const crossings = used.length > 1 ? crossingsOf(model, regions.soilAt, tensorOf, inputs) : [];
   const kc = counted === null ? null : equivalentK(counted);
   return {
     soilAt: regions.soilAt,

@@ -30,6 +30,8 @@ export function soilRegionsOf(
   reach: number,
   up: Pair,
 ): SoilRegions {
+  // One soil needs no regions, and a net is read again at every move of a vertex.
+  if (placed.length === 0) return { soilAt: () => section, boundaries: [], findings: [] };
   const soilLines = linesOfKind(lines, 'soilBoundary');
   const bounding = linesOfKind(lines, 'impervious', 'submergedFace', 'outflowFace', 'ground');
   const places = placed.flatMap((soil) => soil.places);
@@ -41,7 +43,7 @@ export function soilRegionsOf(
     soilAt: (x, y) => (faces === null ? section : (owners.get(faces.at(x, y)) ?? section)),
     boundaries: parting.boundaries,
     findings: [
-      ...(placed.length === 0 ? [] : parting.open),
+      ...parting.open,
       ...(faces === null ? notParted(frame === null ? [] : placed) : contradictions(faces, placed)),
     ],
   };

@@ -1,9 +1,10 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { flatApronNet } from '#shared/compute/exact/flat-apron-net.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { similarityBackward } from '#shared/compute/similarity.ts';
 import { type EntityOf, type FlowNetDocument, UNSAID } from '#shared/contract/document.ts';
-import type { NetReading } from '#shared/contract/reading.ts';
+import { type NetReading, netReading } from '#shared/contract/reading.ts';
 import { changed, withAdded } from '#tests/support/exact-nets/edit-net.ts';
 import {
   entityIdOf,
@@ -110,6 +111,78 @@ describe('a zoned strip in series (Darcy 1856)', () => {
     expect(codesOf(reading)).toContain('noCommonTransform');
     expect(reading.frame!.kind).toBe('none');
     expect(worstInDrops(reading, net.headAt)).toBeLessThan(0.003);
+  });
+});
+
+describe('whatever soils are typed', () => {
+  const net = flatApronNet({
+    width: 20,
+    headwater: 106,
+    tailwater: 100,
+    drops: 6,
+    channels: 3,
+    middle: [0, 98],
+  });
+  const plain = exactNetDocument(net, { pxPerUnit: 60, readings: randomReadings(net, 3, 2, 0.1) });
+  const k = fc.option(
+    fc.oneof(fc.double({ min: 1e-9, max: 1e-2, noNaN: true }), fc.constantFrom(5e-324, 1e3)),
+  );
+  const soil = fc.record({
+    k,
+    kv: k,
+    dipDeg: fc.double({ min: -90, max: 90, noNaN: true }),
+    places: fc.array(
+      fc.tuple(fc.double({ min: 0, max: 5000, noNaN: true }), fc.double({ min: 0, max: 3500, noNaN: true })),
+      { maxLength: 3 },
+    ),
+  });
+  const place = fc.tuple(fc.integer({ min: 500, max: 4500 }), fc.integer({ min: 500, max: 3200 }));
+
+  it('the reading is answered and keeps to its schema', () => {
+    fc.assert(
+      fc.property(
+        soil,
+        fc.array(soil, { maxLength: 2 }),
+        fc.array(fc.array(place, { minLength: 2, maxLength: 4 }), { maxLength: 3 }),
+        fc.constantFrom('equal' as const, 'plottingExaggeration' as const, 'transformedSection' as const),
+        (section, placed, boundaries, scales) => {
+          const { k: kh, kv, dipDeg } = section;
+          const typed = changed(plain, 'permeability', (value) => ({ ...value, k: kh, kv, dipDeg }));
+          const scaled = changed(typed, 'setOut', (value) => ({ ...value, scales }));
+          const document = withAdded(
+            scaled,
+            ...boundaries.map(
+              (points): EntityOf<'line'> => ({
+                kind: 'line',
+                origin: 'traced',
+                line: 'soilBoundary',
+                name: '',
+                points,
+                finished: true,
+                water: null,
+                head: null,
+                drops: null,
+              }),
+            ),
+            ...placed.map(
+              (each, i): EntityOf<'soil'> => ({
+                kind: 'soil',
+                ...UNSAID.soil,
+                name: `soil ${i}`,
+                unit: 'm/s',
+                factor: null,
+                source: '',
+                ...each,
+              }),
+            ),
+          );
+          const reading = netReading.parse(readNet(document));
+          expect(reading.frame).not.toBeNull();
+          expect(reading.soils).not.toBeNull();
+        },
+      ),
+      { numRuns: 30 },
+    );
   });
 });
 
