@@ -49,7 +49,14 @@ export function Schedule({
       <thead>
         <tr>
           {columns.map((column) => (
-            <Head key={column.column} column={column} sort={sort} onSort={onSort} />
+            <Head
+              key={column.column}
+              column={column}
+              sort={sort}
+              onSort={onSort}
+              // With the columns of measured values the heads need two lines, so that all of them fit beside the margin.
+              wraps={measured.length > 0}
+            />
           ))}
           <th scope="col" className="border-b border-rule px-2">
             <span className="sr-only">{text.head.count}</span>
@@ -92,10 +99,12 @@ function Head({
   column: { column, label },
   sort,
   onSort,
+  wraps,
 }: {
   column: ScheduleColumn;
   sort: Sort;
   onSort: (sort: Sort) => void;
+  wraps: boolean;
 }) {
   const sorted = sort.column === column;
   const direction = sort.descending ? 'descending' : 'ascending';
@@ -105,14 +114,15 @@ function Head({
       scope="col"
       aria-sort={sorted ? direction : 'none'}
       className={classNames(
-        'border-b border-rule px-2 text-sm font-semibold whitespace-nowrap text-ink-2',
+        'border-b border-rule px-2 align-bottom text-sm font-semibold text-ink-2',
+        wraps ? 'whitespace-normal' : 'whitespace-nowrap',
         first ? 'sticky left-0 bg-film text-left' : 'text-right',
       )}
     >
       <button
         type="button"
         title={text.sortBy(label)}
-        className="py-[5px] font-semibold hover:underline"
+        className={classNames('py-[5px] font-semibold hover:underline', first ? 'text-left' : 'text-right')}
         onClick={() => onSort(nextSort(sort, column))}
       >
         {label}
