@@ -6,23 +6,29 @@ export type Ring = { readonly xy: Float64Array; readonly box: Box };
 
 /** A ring through points, consecutive repeats and the closing repeat left out; null with fewer than three left. */
 export function ringOf(points: readonly Pair[]): Ring | null {
-  const kept: Pair[] = [];
-  for (const point of points) {
-    const before = kept[kept.length - 1];
-    if (before === undefined || before[0] !== point[0] || before[1] !== point[1]) kept.push(point);
+  const kept: number[] = [];
+  for (const [x, y] of points) {
+    const n = kept.length;
+    if (n === 0 || kept[n - 2] !== x || kept[n - 1] !== y) kept.push(x, y);
   }
-  while (kept.length > 1 && same(kept[0]!, kept[kept.length - 1]!)) kept.pop();
-  if (kept.length < 3) return null;
-  const xs = kept.map((point) => point[0]);
-  const ys = kept.map((point) => point[1]);
-  return {
-    xy: Float64Array.from(kept.flat()),
-    box: { minX: Math.min(...xs), minY: Math.min(...ys), maxX: Math.max(...xs), maxY: Math.max(...ys) },
-  };
+  while (kept.length > 2 && kept[0] === kept[kept.length - 2] && kept[1] === kept[kept.length - 1]) {
+    kept.length -= 2;
+  }
+  return kept.length < 6 ? null : { xy: Float64Array.from(kept), box: boxOf(kept) };
 }
 
-function same(a: Pair, b: Pair): boolean {
-  return a[0] === b[0] && a[1] === b[1];
+function boxOf(xy: readonly number[]): Box {
+  let minX = Number.POSITIVE_INFINITY;
+  let minY = Number.POSITIVE_INFINITY;
+  let maxX = Number.NEGATIVE_INFINITY;
+  let maxY = Number.NEGATIVE_INFINITY;
+  for (let i = 0; i < xy.length; i += 2) {
+    minX = Math.min(minX, xy[i]!);
+    maxX = Math.max(maxX, xy[i]!);
+    minY = Math.min(minY, xy[i + 1]!);
+    maxY = Math.max(maxY, xy[i + 1]!);
+  }
+  return { minX, minY, maxX, maxY };
 }
 
 /**

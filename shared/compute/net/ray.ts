@@ -1,4 +1,4 @@
-import { lengthOf, type Polyline } from '#shared/compute/geometry/polyline.ts';
+import { lengthOf, type Polyline, RUN } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import type { HeadLine } from '#shared/compute/net/neighbours.ts';
 
@@ -40,13 +40,34 @@ function firstHit(
   least: number,
 ): { s: number; distance: number } | null {
   if (!mayMeet(at, direction, shape)) return null;
-  const { xy, cum } = shape;
+  let found: { s: number; distance: number } | null = null;
+  let nearest = limit;
+  for (let run = 0; 4 * run < shape.runs.length; run += 1) {
+    if (!mayMeetRun(at, direction, shape, run)) continue;
+    const hit = firstInRun(at, direction, shape, run, nearest, least);
+    if (hit === null) continue;
+    found = hit;
+    nearest = hit.distance;
+  }
+  return found;
+}
+
+function firstInRun(
+  at: Pair,
+  direction: Pair,
+  { xy, cum }: Polyline,
+  run: number,
+  limit: number,
+  least: number,
+): { s: number; distance: number } | null {
   const [dx, dy] = direction;
   let found: { s: number; distance: number } | null = null;
   let nearest = limit;
+  const first = run * RUN;
+  const last = Math.min(cum.length - 1, first + RUN);
   // Offset of each vertex from the ray's line: a change of sign is a crossing.
-  let before = dx * (xy[1]! - at[1]) - dy * (xy[0]! - at[0]);
-  for (let i = 1; i < cum.length; i += 1) {
+  let before = dx * (xy[2 * first + 1]! - at[1]) - dy * (xy[2 * first]! - at[0]);
+  for (let i = first + 1; i <= last; i += 1) {
     const x = xy[2 * i]!;
     const y = xy[2 * i + 1]!;
     const here = dx * (y - at[1]) - dy * (x - at[0]);
@@ -65,8 +86,23 @@ function firstHit(
   return found;
 }
 
-function mayMeet(at: Pair, direction: Pair, shape: Polyline): boolean {
-  const { minX, minY, maxX, maxY } = shape.box;
+function mayMeet(at: Pair, direction: Pair, { box }: Polyline): boolean {
+  return mayMeetBox(at, direction, box.minX, box.minY, box.maxX, box.maxY);
+}
+
+function mayMeetRun(at: Pair, direction: Pair, { runs }: Polyline, run: number): boolean {
+  const k = 4 * run;
+  return mayMeetBox(at, direction, runs[k]!, runs[k + 1]!, runs[k + 2]!, runs[k + 3]!);
+}
+
+function mayMeetBox(
+  at: Pair,
+  direction: Pair,
+  minX: number,
+  minY: number,
+  maxX: number,
+  maxY: number,
+): boolean {
   const [dx, dy] = direction;
   if (dx > 0 ? maxX < at[0] : dx < 0 ? minX > at[0] : minX > at[0] || maxX < at[0]) return false;
   if (dy > 0 ? maxY < at[1] : dy < 0 ? minY > at[1] : minY > at[1] || maxY < at[1]) return false;

@@ -1,6 +1,6 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { countMeetings } from '#shared/compute/geometry/crossing.ts';
-import { lengthOf } from '#shared/compute/geometry/polyline.ts';
+import { lengthOf, type Polyline } from '#shared/compute/geometry/polyline.ts';
 import { type SelfCrossing, selfCrossingOf } from '#shared/compute/geometry/self-crossing.ts';
 import type { NetLine } from '#shared/compute/net/net-lines.ts';
 import type { Finding } from '#shared/contract/reading.ts';
@@ -25,9 +25,22 @@ export function findTangles(lines: readonly NetLine[], accuracyPx: number): Find
   return loops.length > 0 ? loops : findThicket(read);
 }
 
-function findLoop(line: NetLine, accuracyPx: number): Finding[] {
-  const slack = Math.max(LEAST_LOOP_PX, LOOP_ACCURACIES * accuracyPx);
+/** Kept as long as the shape is: a line that was not touched is not looked through again. */
+const loopsKept = new WeakMap<
+  Polyline,
+  { readonly slack: number; readonly kind: NetLine['kind']; readonly crossing: SelfCrossing | null }
+>();
+
+function loopOf(line: NetLine, slack: number): SelfCrossing | null {
+  const known = loopsKept.get(line.shape);
+  if (known?.slack === slack && known.kind === line.kind) return known.crossing;
   const crossing = selfCrossingOf(line.shape, slack, (each) => !closesOutline(line, each));
+  loopsKept.set(line.shape, { slack, kind: line.kind, crossing });
+  return crossing;
+}
+
+function findLoop(line: NetLine, accuracyPx: number): Finding[] {
+  const crossing = loopOf(line, Math.max(LEAST_LOOP_PX, LOOP_ACCURACIES * accuracyPx));
   if (crossing === null) return [];
   return [
     makeFinding('wrong', 'lineCrossesItself', 'This line crosses itself. Draw it again or remove the loop.', {
