@@ -18,6 +18,8 @@ export type FreeSurface = {
   readonly wetPlaces: readonly Pair[];
 };
 
+/** Of the mesh on which the surface is looked for; a section too intricate for it is meshed less well. */
+const MOST_VERTICES = 4000;
 /** Permeability above the free surface, in parts of that below. */
 const DRY_PART = 1e-4;
 /**
@@ -31,8 +33,10 @@ const LEAST_TAKEN = [0.15, 0.2] as const;
  * Rounds on the first and the refined mesh. Of the pressures of the last ones the mean is taken, as the exit may go on
  * swinging by a side of the mesh.
  */
-const MOST_ROUNDS = [40, 22] as const;
+const MOST_ROUNDS = [30, 22] as const;
 const MEAN_OF = 8;
+/** Turns in which the faces of outflow follow the pressure within a round; the next round goes on with them. */
+const MOST_TURNS = 2;
 /** Change of pressure head in a round, in parts of the range of heads, at which the surface rests. */
 const RESTS = [2e-3, 2e-4] as const;
 /** A surface that still moves by this part of the range after the last round has not been found. */
@@ -50,7 +54,7 @@ const END_SIZE = 0.04;
 export function freeSurface(outline: SectionOutline, elements: number): FreeSurface | SectionFailure {
   const size = coarsestSize(outline, elements);
   const corners = fineCorners(outline);
-  const options = { wanted: (region: number) => region !== OUTSIDE, mostVertices: 20_000 };
+  const options = { wanted: (region: number) => region !== OUTSIDE, mostVertices: MOST_VERTICES };
   refine(outline.mesh, { ...options, sizeAt: sizeField(corners, size) });
   const first = headProblemOf(outline);
   const rough = settle(first, new Float64Array(first.mesh.x.length).fill(1), 0);
@@ -90,7 +94,7 @@ function settle(problem: HeadProblem, first: Float64Array, stage: 0 | 1): Settle
   let taken: number = TAKEN[stage];
   let best = Number.POSITIVE_INFINITY;
   for (let round = 0; round < MOST_ROUNDS[stage]; round += 1) {
-    const head = headField(problem, cutElements(problem, pressure), open);
+    const head = headField(problem, cutElements(problem, pressure), open, MOST_TURNS);
     if (head === null)
       return failure(
         'no-head',

@@ -40,6 +40,7 @@ export type SolveOptions = {
 const USUAL = { accuracy: 1e-3, elements: 1200, mostNodes: 20_000 } as const;
 const MOST_ROUNDS = 8;
 const NO_ENERGY = 1e-8;
+const NO_FLOW = 1e-9;
 /** Part of the gap that is refined away in a round (Dörfler 1996). */
 const MARKED_PART = 0.6;
 
@@ -135,7 +136,7 @@ function solveConfined(
     refine(outline.mesh, {
       sizeAt,
       wanted,
-      mostVertices: round === 0 ? options.mostNodes : mostVertices,
+      mostVertices: round === 0 ? 2 * mostVertices : mostVertices,
       marked,
     });
     const solved = solveOnce(outline);
@@ -145,6 +146,13 @@ function solveConfined(
     if (isDone || outline.mesh.x.length >= mostVertices) return solutionOf(problem, outline, corners, solved);
     marked = worstElements(gap.byElement).map((n) => solved.problem.mesh.triangles[n]!);
   }
+}
+
+/** Flow below which there is none: a rounding of what would pass with the section's height lost. */
+function leastFlow({ elevations, tensorOf }: HeadProblem): number {
+  const height = elevations.reduce((most, each) => Math.max(most, Math.abs(each)), 0);
+  const { xx, yy } = tensorOf(0);
+  return Math.max(NO_FLOW * Math.sqrt(xx * yy) * height, Number.MIN_VALUE);
 }
 
 /** The gap in parts of the energy, but where next to nothing flows in parts of what would with the section's height lost. */
@@ -203,7 +211,7 @@ function solutionOf(
     flow,
     inflow,
     outflow,
-    imbalance: inflow > 0 ? Math.abs(inflow - outflow) / inflow : 0,
+    imbalance: Math.abs(inflow - outflow) / Math.max(inflow, leastFlow(headProblem)),
     gap: gap === null || gap.energy === 0 ? null : gap.gap / gap.energy,
     exits: exitGradients(headProblem, head, outline.frame, corners),
     phreatic: null,
