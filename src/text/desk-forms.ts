@@ -241,9 +241,7 @@ export const pointFormText = {
 } as const;
 
 export const findingsText = {
-  title: 'Net check',
   none: 'Nothing found. The checks made are of the set-out, the levels, the order of the lines and the count.',
   weights: { wrong: 'Wrong', missing: 'Missing', question: 'Question', note: 'Note' },
   show: 'Show on the sheet',
-  working: 'The net is being read…',
 } as const;

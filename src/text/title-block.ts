@@ -57,6 +57,8 @@ export const titleBlockText = {
   within: (factor: string) => `, ×/÷ ${factor}`,
   checkNothing: 'Nothing found',
   checkMore: (first: string, more: number) => (more === 0 ? first : `${first} And ${more} more.`),
+  checkSummary: (summary: string, others: number) =>
+    others === 0 ? summary : `${summary}, ${others} other ${others === 1 ? 'question' : 'questions'}`,
   notDrawn: 'Nobody yet',
   checkedBy: {
     draft: 'not sent',
@@ -79,7 +81,7 @@ export const titleBlockText = {
     headPerDrop: 'State the count',
     permeability: 'Enter the permeability',
     seepage: 'Show what the seepage is made of',
-    netCheck: 'Show what was found',
+    netCheck: 'Show the net check and the independent solution',
     drawn: 'Show the revisions',
     checked: 'Show the revisions',
     calculation: 'Show the revisions',

@@ -12,6 +12,7 @@ import { SchedulePane } from '#client/features/desk/components/schedule-pane.tsx
 import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
 import { StoreNotice } from '#client/features/desk/components/store-notice.tsx';
 import { ToolPalette } from '#client/features/desk/components/tool-palette.tsx';
+import { useDeskChecks } from '#client/features/desk/components/use-desk-checks.ts';
 import { useSavingMoments } from '#client/features/desk/components/use-saving-moments.ts';
 import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
 import { downloadFrom } from '#client/lib/download.ts';
@@ -53,6 +54,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
   const [dialog, setDialog] = useState<'none' | 'send' | 'compare'>('none');
   const notes = useDeskNotes(netId, store);
   const { margin, pane, setPane, show, close } = useMargin(store, narrow, notes);
+  const checks = useDeskChecks(store);
   const notice = useNotice();
   const flush = async () => saving?.flush();
   useDeskLive(netId, session);
@@ -137,6 +139,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
               <MarginFormPane
                 open={margin.form}
                 store={store}
+                checks={checks}
                 detail={detail}
                 flush={flush}
                 onOpen={(form) => show({ shows: 'form', form })}

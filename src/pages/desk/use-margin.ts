@@ -54,6 +54,8 @@ export function useMargin(
             );
           case 'openMeasured':
             return form({ form: 'measured', pointId: intent.id });
+          case 'openReading':
+            return form({ form: 'reading', pointId: intent.id });
           case 'openLine':
             return form({ form: 'line', lineId: intent.id });
           case 'openWaterLevels':
@@ -70,18 +72,18 @@ export function useMargin(
     return store.subscribe((state, before) => {
       const form = formFor(state, before);
       if (form) setMargin({ shows: 'form', form });
-      else if (chosenLine(state) === null && chosenLine(before) !== null) setMargin(withoutLine);
+      else if (chosen(state) === null && chosen(before) !== null) setMargin(withoutChosen);
     });
   }, [store, narrow, writing]);
 
-  // A line that goes takes its form with it.
-  const lineId = margin.shows === 'form' && margin.form.form === 'line' ? margin.form.lineId : null;
+  // A line or point that goes takes its form with it.
+  const shownId = entityShown(margin);
   useEffect(() => {
-    if (lineId === null) return;
+    if (shownId === null) return;
     return store.subscribe((state) => {
-      if (!state.document.entities[lineId]) setMargin(NOTES);
+      if (!state.document.entities[shownId]) setMargin(NOTES);
     });
-  }, [store, lineId]);
+  }, [store, shownId]);
 
   return { margin, pane, setPane, show, close: () => setMargin(NOTES) };
 }
@@ -89,14 +91,25 @@ export function useMargin(
 /** The form that a change of tool or of selection asks for; null when it asks for none. */
 function formFor(state: DeskState, before: DeskState): MarginForm | null {
   if (state.tool === 'knownPoint' && before.tool !== 'knownPoint') return { form: 'setOut' };
-  const lineId = chosenLine(state);
-  return lineId !== null && lineId !== chosenLine(before) ? { form: 'line', lineId } : null;
+  const id = chosen(state);
+  if (id === null || id === chosen(before)) return null;
+  if (state.selection.kind === 'line') return { form: 'line', lineId: id };
+  // While points are being placed one after the other nothing opens.
+  return state.tool === 'readingPoint' ? null : { form: 'reading', pointId: id };
 }
 
-function chosenLine({ selection }: DeskState): string | null {
-  return selection.kind === 'line' && selection.ids.length === 1 ? (selection.ids[0] ?? null) : null;
+/** The one line or reading point that is chosen. */
+function chosen({ selection }: DeskState): string | null {
+  const opens = selection.kind === 'line' || selection.kind === 'readingPoint';
+  return opens && selection.ids.length === 1 ? (selection.ids[0] ?? null) : null;
 }
 
-/** A line no longer chosen gives its place in the margin back to the notes; other forms stay. */
-const withoutLine = (margin: Margin): Margin =>
-  margin.shows === 'form' && margin.form.form === 'line' ? NOTES : margin;
+/** What is no longer chosen gives its place in the margin back to the notes; other forms stay. */
+const withoutChosen = (margin: Margin): Margin => (entityShown(margin) === null ? margin : NOTES);
+
+/** The line or point that the margin is about, which it goes with. */
+function entityShown(margin: Margin): string | null {
+  if (margin.shows !== 'form') return null;
+  if (margin.form.form === 'line') return margin.form.lineId;
+  return margin.form.form === 'reading' ? margin.form.pointId : null;
+}

@@ -17,7 +17,7 @@ export function FormPane({
   // or a field has opened leaves the focus there: Delete must still reach the line that was just chosen.
   useEffect(() => {
     const held = document.activeElement;
-    const elsewhere = held?.closest('[role="application"], input, select, textarea');
+    const elsewhere = held?.closest('[role="application"], table, input, select, textarea');
     if (!elsewhere) heading.current?.focus({ preventScroll: true });
   }, []);
   return (

@@ -1,32 +1,38 @@
 import { useStore } from 'zustand';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
 import type { Finding } from '#shared/contract/reading.ts';
+import type { DeskChecks } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import type { BoundaryKind, ToolId } from '../model/tool-choice.ts';
 import { CountForm } from './count-form.tsx';
 import type { DeskFormProps } from './desk-form.ts';
-import { FindingsPane } from './findings-pane.tsx';
+import { IndependentPane } from './independent-pane.tsx';
 import { LineForm } from './line-form.tsx';
 import { LoadCasePane } from './load-case-pane.tsx';
 import { MeasuredForm } from './measured-form.tsx';
+import { NetCheckPane } from './net-check-pane.tsx';
 import { PermeabilityForm } from './permeability-form.tsx';
 import { PointForm } from './point-form.tsx';
+import { ReadingPane } from './reading-pane.tsx';
 import { SetOutForm } from './set-out-form.tsx';
 import { SoilForm } from './soil-form.tsx';
 import { WaterForm } from './water-form.tsx';
 
 /** What is open in the margin in the place of the notes. */
 export type MarginForm =
-  | { form: 'loadCase' | 'water' | 'permeability' | 'count' | 'point' | 'findings' }
+  | { form: 'loadCase' | 'water' | 'permeability' | 'count' | 'point' | 'findings' | 'independent' }
   /** `placedId`: the known point just placed, whose offset is typed next. */
   | { form: 'setOut'; placedId?: string }
   | { form: 'line'; lineId: string }
   | { form: 'soil'; soilId: string }
-  | { form: 'measured'; pointId: string };
+  | { form: 'measured'; pointId: string }
+  /** How a point is read. */
+  | { form: 'reading'; pointId: string };
 
 interface MarginFormProps {
   open: MarginForm;
   store: DeskStore;
+  checks: DeskChecks;
   detail: NetDetailDto;
   flush: () => Promise<void>;
   onOpen: (form: MarginForm) => void;
@@ -36,7 +42,16 @@ interface MarginFormProps {
 }
 
 /** The form that is open, wired to the store. */
-export function MarginFormPane({ open, store, detail, flush, onOpen, onClose, onSheet }: MarginFormProps) {
+export function MarginFormPane({
+  open,
+  store,
+  checks,
+  detail,
+  flush,
+  onOpen,
+  onClose,
+  onSheet,
+}: MarginFormProps) {
   const document = useStore(store, (state) => state.document);
   const reading = useStore(store, (state) => state.reading);
   const disabled = useStore(store, (state) => state.readOnly);
@@ -77,6 +92,7 @@ export function MarginFormPane({ open, store, detail, flush, onOpen, onClose, on
           {...form}
           newId={store.newId}
           onOpenSoil={(soilId) => onOpen({ form: 'soil', soilId })}
+          onOpen={onOpen}
         />
       );
     case 'soil':
@@ -102,13 +118,28 @@ export function MarginFormPane({ open, store, detail, flush, onOpen, onClose, on
       return <LineForm {...form} key={open.lineId} lineId={open.lineId} />;
     case 'findings':
       return (
-        <FindingsPane
-          reading={reading}
+        <NetCheckPane
+          store={store}
+          checks={checks}
+          onOpen={onOpen}
           onClose={onClose}
+          onSheet={onSheet}
           onShow={(found) => {
             showFinding(store, found);
             onSheet();
           }}
+        />
+      );
+    case 'independent':
+      return <IndependentPane store={store} checks={checks} onClose={onClose} onSheet={onSheet} />;
+    case 'reading':
+      return (
+        <ReadingPane
+          key={open.pointId}
+          store={store}
+          pointId={open.pointId}
+          onOpen={onOpen}
+          onClose={onClose}
         />
       );
   }

@@ -33,7 +33,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '' }: Sched
   useSelectedInView(box, selectedIds[0]);
   const copy = async () => {
     if (!reading) return;
-    const done = await copyText(scheduleTsv(document, reading.points, sort));
+    const done = await copyText(scheduleTsv(document, reading.points, sort, reading.measured));
     notice(done ? text.copied : text.notCopied);
   };
   const edit = (made: Edit) => {
@@ -69,6 +69,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '' }: Sched
             onEdit={readOnly ? null : edit}
             selectedIds={selectedIds}
             onSelect={select}
+            onExplain={(id) => store.emitIntent({ type: 'openReading', id })}
             onMeasured={readOnly ? undefined : (id) => store.emitIntent({ type: 'openMeasured', id })}
           />
         </div>

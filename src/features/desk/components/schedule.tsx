@@ -1,5 +1,6 @@
 import { Fragment, useState } from 'react';
 import { classNames } from '#client/components/class-names.ts';
+import { explanationText } from '#client/text/explanation.ts';
 import { measuredText } from '#client/text/measured.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
@@ -27,6 +28,8 @@ interface ScheduleProps {
   onSelect: ((id: string) => void) | null;
   /** Opens the form of what was measured at a point; left out where nothing may be typed. */
   onMeasured?: ((id: string) => void) | undefined;
+  /** Shows how a point is read; left out where there is no sheet to show it on. */
+  onExplain?: ((id: string) => void) | undefined;
 }
 
 /** The table of reading points: sorted by its heads, edited where it stands, each row with its count in words. */
@@ -39,6 +42,7 @@ export function Schedule({
   selectedIds,
   onSelect,
   onMeasured,
+  onExplain,
 }: ScheduleProps) {
   const [openId, setOpenId] = useState<string | null>(null);
   const { measured } = reading;
@@ -84,6 +88,7 @@ export function Schedule({
                 point={point}
                 onEdit={onEdit}
                 onMeasured={onMeasured}
+                onExplain={onExplain}
                 hasMeasured={measured.some(({ id }) => id === point.id)}
                 span={columns.length + 1}
               />
@@ -136,12 +141,14 @@ function Explanation({
   point,
   onEdit,
   onMeasured,
+  onExplain,
   hasMeasured,
   span,
 }: {
   point: PointReading;
   onEdit: ScheduleProps['onEdit'];
   onMeasured: ScheduleProps['onMeasured'];
+  onExplain: ScheduleProps['onExplain'];
   hasMeasured: boolean;
   span: number;
 }) {
@@ -152,6 +159,15 @@ function Explanation({
         {point.explanation ? <p className="m-0 max-w-[80ch]">{point.explanation}</p> : null}
         {remark && remark !== point.explanation ? (
           <p className="m-0 max-w-[80ch] text-attention">{remark}</p>
+        ) : null}
+        {onExplain ? (
+          <button
+            type="button"
+            className="touch mt-1 mr-4 text-sm text-ink-2 underline"
+            onClick={() => onExplain(point.id)}
+          >
+            {explanationText.open}
+          </button>
         ) : null}
         {onMeasured ? (
           <button

@@ -205,14 +205,28 @@ function seepageOf(document: FlowNetDocument, reading: NetReading | null): Told 
   return { label, value: [needed], state: 'missing' };
 }
 
+/** Findings that say in a sentence what the check's own line says in counts. */
+const SAID_BY_CHECK: readonly string[] = ['cellsNotSquare', 'anglesNotSquare', 'channelFlowsDiffer'];
+
+/** What stands in the way comes first; else how the net is drawn, and how many other questions there are. */
 function netCheckOf(reading: NetReading | null): Told {
   const label = text.labels.netCheck;
   if (!reading) return { label, value: WAITING };
   const open = byWeight(reading.findings).filter((found) => found.weight !== 'note');
   const [first] = open;
-  if (!first) return { label, value: [text.checkNothing], state: 'ok' };
-  const state = first.weight === 'note' ? 'ok' : first.weight;
-  return { label, value: [text.checkMore(first.text, open.length - 1)], state };
+  const summary = reading.netCheck?.summary ?? null;
+  if (summary === null || first?.weight === 'wrong' || first?.weight === 'missing') {
+    if (!first) return { label, value: [text.checkNothing], state: 'ok' };
+    const state = first.weight === 'note' ? 'ok' : first.weight;
+    return { label, value: [text.checkMore(first.text, open.length - 1)], state };
+  }
+  const others = open.filter(({ code }) => !SAID_BY_CHECK.includes(code)).length;
+  const isPoor = summary.cellsPoor + summary.anglesPoor + summary.channelsPoor > 0;
+  return {
+    label,
+    value: [text.checkSummary(summary.text, others)],
+    state: isPoor || others > 0 ? 'question' : 'ok',
+  };
 }
 
 const WEIGHTS: readonly Finding['weight'][] = ['wrong', 'missing', 'question', 'note'];

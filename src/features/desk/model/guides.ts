@@ -56,6 +56,7 @@ export const NO_GUIDES: Guides = { areas: [], lines: [], marks: [] };
 
 /** The guides of all owners with those of one put in, or taken out with null. */
 export function withGuides(all: GuidesByOwner, owner: GuideOwner, guides: Guides | null): GuidesByOwner {
+  if (guides === null && all[owner] === undefined) return all;
   const { [owner]: _, ...others } = all;
   return guides === null ? others : { ...others, [owner]: guides };
 }

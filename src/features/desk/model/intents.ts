@@ -7,5 +7,6 @@ export type DeskIntent =
   | { type: 'openKnownPoint'; id: string }
   | { type: 'openReadingPoint'; id: string }
   | { type: 'openMeasured'; id: string }
+  | { type: 'openReading'; id: string }
   | { type: 'openLine'; id: string }
   | { type: 'openWaterLevels' };

@@ -1,0 +1,161 @@
+import { useStore } from 'zustand';
+import { Button } from '#client/components/button.tsx';
+import { CheckField } from '#client/components/field.tsx';
+import { independentText as text } from '#client/text/independent.ts';
+import { STEPS } from '#shared/compute/beside/difference-picture.ts';
+import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import { fixedText } from '#shared/text/number-text.ts';
+import { unitNames } from '#shared/text/unit-text.ts';
+import type { DeskChecks, IndependentResult, IndependentState } from '../model/desk-checks.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+import { FormPane } from './form-pane.tsx';
+import { ExitTable, HeadTable, SeepageTable } from './independent-tables.tsx';
+import { Aside, MarginSection } from './margin-section.tsx';
+
+interface IndependentPaneProps {
+  store: DeskStore;
+  checks: DeskChecks;
+  onClose: () => void;
+  /** Shows the sheet, where it is not beside the pane already. */
+  onSheet: () => void;
+}
+
+/** The section solved on its own, beside the traced net: asked for, followed, and laid over the sheet. */
+export function IndependentPane({ store, checks, onClose, onSheet }: IndependentPaneProps) {
+  const { independent, result } = useStore(checks);
+  const revision = useStore(store, (state) => state.documentRevision);
+  const lookAt = (at: SheetPoint) => {
+    store.lookAt(at);
+    onSheet();
+  };
+  return (
+    <FormPane title={text.title} onClose={onClose}>
+      <Aside>{text.lead}</Aside>
+      <Progress state={independent} again={result !== null} checks={checks} onPlace={lookAt} />
+      {result && result.of !== revision ? (
+        <p className="m-0 bg-doubt p-2 text-attention">{text.outOfDate}</p>
+      ) : null}
+      {result ? <Result result={result} store={store} checks={checks} onPlace={lookAt} /> : null}
+    </FormPane>
+  );
+}
+
+function Progress({
+  state,
+  again,
+  checks,
+  onPlace,
+}: {
+  state: IndependentState;
+  again: boolean;
+  checks: DeskChecks;
+  onPlace: (at: SheetPoint) => void;
+}) {
+  const working = state.state === 'working';
+  return (
+    <div className="flex flex-col gap-2">
+      <div className="flex items-center gap-3">
+        {working ? (
+          <Button look="quiet" onClick={() => checks.cancel()}>
+            {text.cancel}
+          </Button>
+        ) : (
+          <Button look={again ? 'quiet' : 'plain'} onClick={() => checks.solve()}>
+            {again ? text.again : text.solve}
+          </Button>
+        )}
+        <span role="status">{working ? text.stages[state.stage] : ''}</span>
+      </div>
+      {state.state === 'failed' ? (
+        <div role="alert" className="bg-doubt p-2">
+          <p className="m-0 text-wrong">
+            <b className="font-semibold">{text.failed}</b> {state.text}
+          </p>
+          <PlaceButton at={state.at} onPlace={onPlace} />
+        </div>
+      ) : null}
+    </div>
+  );
+}
+
+function PlaceButton({ at, onPlace }: { at: SheetPoint | null; onPlace: (at: SheetPoint) => void }) {
+  if (at === null) return null;
+  return (
+    <button type="button" className="touch text-sm underline" onClick={() => onPlace(at)}>
+      {text.showPlace}
+    </button>
+  );
+}
+
+interface ResultProps {
+  result: IndependentResult;
+  store: DeskStore;
+  checks: DeskChecks;
+  onPlace: (at: SheetPoint) => void;
+}
+
+function Result({ result: { beside }, store, checks, onPlace }: ResultProps) {
+  const document = useStore(store, (state) => state.document);
+  return (
+    <>
+      <Switches beside={beside} checks={checks} />
+      <MarginSection title={text.heads}>
+        <HeadTable comparison={beside.comparison} document={document} />
+      </MarginSection>
+      <MarginSection title={text.seepage}>
+        {beside.hasPermeability ? (
+          <SeepageTable comparison={beside.comparison} unitSystem={document.unitSystem} />
+        ) : (
+          <p className="m-0 text-attention">{text.noPermeability}</p>
+        )}
+      </MarginSection>
+      {beside.exits.length > 0 ? (
+        <MarginSection title={text.exits}>
+          <Aside>{text.exitsLead}</Aside>
+          <ExitTable exits={beside.exits} document={document} onPlace={onPlace} />
+        </MarginSection>
+      ) : null}
+      <Quality beside={beside} document={document} />
+    </>
+  );
+}
+
+function Switches({ beside, checks }: { beside: IndependentResult['beside']; checks: DeskChecks }) {
+  const { netShown, differencesShown } = useStore(checks);
+  const steps = STEPS.map((part) => text.percent(part, 1));
+  const { picture } = beside;
+  return (
+    <MarginSection title={text.show}>
+      <CheckField
+        label={text.showNet}
+        hint={text.showNetHint}
+        checked={netShown}
+        onChange={(event) => checks.showNet(event.target.checked)}
+      />
+      <CheckField
+        label={text.showDifferences}
+        hint={picture.compared > 0 ? text.differencesHint(steps) : text.noDifferences}
+        disabled={picture.compared === 0}
+        checked={differencesShown && picture.compared > 0}
+        onChange={(event) => checks.showDifferences(event.target.checked)}
+      />
+    </MarginSection>
+  );
+}
+
+function Quality({ beside, document }: { beside: IndependentResult['beside']; document: FlowNetDocument }) {
+  const { net, imbalance, gap, surfaceMisfit, nodeCount, usesPhreaticLine } = beside;
+  const { length } = unitNames(document.unitSystem);
+  const channels = net.channels === null ? null : fixedText(net.channels, 2);
+  return (
+    <MarginSection title={text.net}>
+      <p className="m-0">{text.netCounts(net.drops, channels)}</p>
+      {usesPhreaticLine ? <p className="m-0 text-attention">{text.usesPhreatic}</p> : null}
+      <Aside>
+        {text.quality(text.percent(imbalance, 2), String(nodeCount))}{' '}
+        {gap === null ? '' : text.gap(text.percent(gap, 2))}{' '}
+        {surfaceMisfit === null ? '' : text.surface(`${fixedText(surfaceMisfit, 3)} ${length}`)}
+      </Aside>
+    </MarginSection>
+  );
+}

@@ -1,0 +1,50 @@
+import { fixedText } from '#shared/text/number-text.ts';
+
+/** Words that tell how a reading came about and how far it can be trusted. */
+export const explanationText = {
+  title: (name: string) => `How ${name || 'the point'} is read`,
+  open: 'Show on the sheet',
+  notRead: 'There is no figure here.',
+  twoWays: 'Two readings of the same lines',
+  way: 'By',
+  hand: 'Hand’s rule',
+  field: 'The field, which is the figure',
+  noField: 'The field (not solved here)',
+  difference: 'Difference',
+  drops: 'Drops lost',
+  head: (unit: string) => `Total head, ${unit}`,
+  apart:
+    'More than 0.1 drop apart. Hand’s rule is poor near tips and where cells are long; look at the lines here.',
+  sameLines: 'Both read the same drawn lines: that they agree says nothing about the net itself.',
+  drawn:
+    'On the sheet: the strip between the two lines, and the shortest ways to them with their parts of the interval.',
+  working: 'The ways are being worked out…',
+  waysFailed: 'The ways could not be worked out. The figures stand all the same.',
+  doubt: '± at 95 %',
+  totalHead: 'Total head',
+  porePressure: 'Pore pressure',
+  seepage: 'Seepage',
+  plusMinus: (figure: string, unit: string) => `± ${figure} ${unit}`,
+  factor: (figure: string) => `×/÷ ${figure}`,
+  noFactor: 'The permeability has no ×/÷ factor, so the seepage has no ±.',
+  share: (part: number) => `${fixedText(100 * part, 0)} %`,
+  shares: (what: string) => `Shares of each source in the ± of ${what}`,
+  none: 'Nothing is in doubt by what is entered.',
+  sharesLead: 'Share of each source in the variance. What stands first is worth bettering first.',
+  notTheNet:
+    'This is the doubt of reading this net. How far the net itself is from the solution is told apart, by the independent solution.',
+  sources: {
+    knownPoints: 'Known points',
+    tracing: 'Tracing of the lines',
+    place: 'Place of the click',
+    waterLevels: 'Water levels',
+    datum: 'Datum',
+    tip: 'Elevation of the tip',
+    gammaW: 'Unit weight of water',
+    permeability: 'Permeability',
+  },
+  change: 'Change',
+  changeNamed: (source: string) => `Change: ${source}`,
+  placeOfNet: 'Independent solution',
+  result: 'Figure',
+} as const;

@@ -1,0 +1,60 @@
+import { fixedText } from '#shared/text/number-text.ts';
+
+/** Words of the independent solution beside the traced net. */
+export const independentText = {
+  title: 'Independent solution',
+  lead: 'Laplace’s equation solved by finite elements between the boundaries drawn, with the levels and permeabilities entered. The traced equipotentials and flow lines are not used.',
+  solve: 'Solve the section',
+  again: 'Solve again',
+  cancel: 'Cancel',
+  stages: {
+    outline: 'Reading the outline of the section…',
+    solving: 'Solving for the heads…',
+    comparing: 'Setting the net beside it…',
+  },
+  failed: 'The section could not be solved.',
+  broken: 'The computation ended unexpectedly. Try again, or reload the page.',
+  showPlace: 'Show the place',
+  outOfDate: 'Out of date: the net has changed since this was solved.',
+  show: 'Over the sheet',
+  showNet: 'Computed net',
+  showNetHint:
+    'Thin dashed lines: equipotentials of as many drops as traced, and flow lines of square cells.',
+  showDifferences: 'Differences of head',
+  differencesHint: (part: readonly string[]) =>
+    `Red where the traced net reads higher, blue where it reads lower; darker beyond ${part.join(', ')} of the head lost.`,
+  noDifferences: 'No differences to draw: the traced net gives no heads yet.',
+  heads: 'Heads at the reading points',
+  sign: 'Difference is traced minus independent. It tells how far the net is from the solution, and is no part of its ±.',
+  head: {
+    point: 'Point',
+    traced: (unit: string) => `Traced, ${unit}`,
+    independent: (unit: string) => `Independent, ${unit}`,
+    difference: (unit: string) => `Difference, ${unit}`,
+    part: 'Of head lost',
+  },
+  outside: 'outside',
+  noPoints: 'No reading points to compare.',
+  seepage: 'Seepage',
+  flowTo: 'Flow',
+  flowHead: { traced: 'Traced', independent: 'Independent', difference: 'Difference' },
+  all: 'All of it',
+  seepageUnit: { SI: 'm³/s per metre', US: 'ft³/s per foot' },
+  noPermeability: 'No permeability is entered: heads are right, seepage has no figure.',
+  exits: 'Steepest exit gradients',
+  exitsLead: 'At a place, positive outwards of the ground.',
+  exit: { boundary: 'Boundary', gradient: 'Gradient', place: 'Place' },
+  singular: 'beside a corner where it has no bound',
+  net: 'Computed net',
+  netCounts: (drops: number, channels: string | null) =>
+    channels === null
+      ? `${drops} drops. Flow lines have no single value here and are left out.`
+      : `${drops} drops, ${channels} channels of square cells.`,
+  usesPhreatic:
+    'No ground closes the section above: the traced phreatic line was taken as its upper boundary, as it is drawn.',
+  quality: (imbalance: string, nodes: string) =>
+    `Inflow and outflow agree within ${imbalance}; ${nodes} nodes.`,
+  gap: (part: string) => `Bound of the error of the seepage: ${part}.`,
+  surface: (length: string) => `On the free surface head and elevation agree within ${length}.`,
+  percent: (part: number, decimals: number) => `${fixedText(100 * part, decimals)} %`,
+} as const;

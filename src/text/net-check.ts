@@ -1,0 +1,41 @@
+import { fixedText, signedText } from '#shared/text/number-text.ts';
+
+/** Words of the net check beside the sheet. */
+export const netCheckText = {
+  title: 'Net check',
+  drawing: 'How the net is drawn',
+  working: 'The net is being read…',
+  none: 'There is no net to check yet.',
+  show: 'Show on the sheet',
+  worst: 'Where it is poor, by effect on the heads',
+  worstLead:
+    'Of the shape alone: by how much the head beside the place may be off. Angles and squares are judged in the section in which cells should be square.',
+  allGood: 'No cell and no angle is poor.',
+  effect: (drops: number) => `± ${fixedText(drops, 2)} drop`,
+  pressure: (value: number, unit: string) => `${Number(value.toPrecision(2))} ${unit}`,
+  channels: 'Channels',
+  channel: (number: number) => `Channel ${number}`,
+  channelFlow: 'Flow beside the others',
+  channelStates: {
+    good: 'as the others',
+    poor: 'differs',
+    partChannel: 'part of a channel',
+    notJudged: 'not judged',
+  },
+  counts: (cells: number, poorCells: number, angles: number, poorAngles: number) =>
+    `${poorCells} of ${cells} cells judged and ${poorAngles} of ${angles} angles judged are poor.`,
+  found: 'Questions and notes',
+  independent: 'Independent solution',
+  independentLead:
+    'The section solved from its boundaries, levels and permeabilities alone, without the lines traced.',
+  open: 'Open the independent solution',
+} as const;
+
+/** Words drawn over the sheet. */
+export const checkMarkText = {
+  ratio: (ratio: number) => `B/L ${fixedText(ratio, 2)}`,
+  angle: (degrees: number) => `${Math.round(degrees)}°`,
+  channel: (share: number) => `flow × ${fixedText(share, 2)}`,
+  part: (part: number) => fixedText(part, 2),
+  difference: (head: number, unit: string) => `${signedText(head, 2)} ${unit}`,
+} as const;
