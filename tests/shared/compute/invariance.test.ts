@@ -1,12 +1,15 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { readNet } from '#shared/compute/read-net.ts';
-import type { FlowNetDocument, VersionedEntity } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { entityIdOf, exactNetDocument, type Tracing } from '#tests/support/exact-nets/exact-net-document.ts';
+import { exactNetDocument, type Tracing } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 import { randomReadings } from '#tests/support/exact-nets/random-readings.ts';
-import { seededRandom } from '#tests/support/exact-nets/seeded-noise.ts';
+import {
+  drawnInAnotherOrder,
+  someLinesReversed,
+  withMoreVertices,
+} from '#tests/support/exact-nets/redrawn.ts';
 
 /** In drops: coordinates of 1e4 px to double precision, times the steepest cell, with room to spare. */
 const SAME = 1e-9;
@@ -29,49 +32,6 @@ function expectSame(actual: ReturnType<typeof dropsOf>, expected: ReturnType<typ
     expect(Math.abs(drops.byHand - expected[i]!.byHand)).toBeLessThan(SAME);
     expect(Math.abs(drops.byField - expected[i]!.byField)).toBeLessThan(SAME_FIELD);
   });
-}
-
-function withEntities(document: FlowNetDocument, entities: VersionedEntity[]): FlowNetDocument {
-  return { ...document, entities: Object.fromEntries(entities.map((entity) => [entity.id, entity])) };
-}
-
-/** The same entities under ids in another order: as if they had been drawn in that order. */
-function drawnInAnotherOrder(document: FlowNetDocument, seed: number): FlowNetDocument {
-  const random = seededRandom(seed);
-  const shuffled = Object.values(document.entities)
-    .map((entity) => ({ entity, key: random() }))
-    .sort((a, b) => a.key - b.key);
-  return withEntities(
-    document,
-    shuffled.map(({ entity }, i) => ({ ...entity, id: entityIdOf(i + 1) })),
-  );
-}
-
-function someLinesReversed(document: FlowNetDocument, seed: number): FlowNetDocument {
-  const random = seededRandom(seed);
-  return withEntities(
-    document,
-    Object.values(document.entities).map((entity) =>
-      entity.value.kind === 'line' && random() < 0.5
-        ? { ...entity, value: { ...entity.value, points: [...entity.value.points].reverse() } }
-        : entity,
-    ),
-  );
-}
-
-/** A vertex more in the middle of every segment. */
-function withMoreVertices(document: FlowNetDocument): FlowNetDocument {
-  return withEntities(
-    document,
-    Object.values(document.entities).map((entity) => {
-      if (entity.value.kind !== 'line') return entity;
-      const points = entity.value.points.flatMap((point, i, all): Array<[number, number]> => {
-        const next = all[i + 1];
-        return next === undefined ? [point] : [point, [(point[0] + next[0]) / 2, (point[1] + next[1]) / 2]];
-      });
-      return { ...entity, value: { ...entity.value, points } };
-    }),
-  );
 }
 
 describe.each(EXACT_NETS)(
