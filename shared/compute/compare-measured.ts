@@ -52,7 +52,7 @@ function compared(value: Point, measured: Measured, point: PointReading, water: 
 function measuredHead({ value, as }: Measured, elevation: number | null, gammaW: number): number | null {
   if (as === 'totalHead') return value;
   if (elevation === null) return null;
-  return elevation + (as === 'pressureHead' ? value : value / gammaW);
+  return finiteOrNull(elevation + (as === 'pressureHead' ? value : value / gammaW));
 }
 
 /** ± of the measured total head; a pressure takes the ± of the tip's typed elevation and of γw with it. */
@@ -69,5 +69,10 @@ function measuredPlusMinus(point: Point, { value, as, plusMinus }: Measured, wat
 /** Root of the sum of squares of what is known; null when nothing is. */
 function combined(...parts: ReadonlyArray<number | null>): number | null {
   const known = parts.filter((part) => part !== null);
-  return known.length === 0 ? null : Math.hypot(...known);
+  return known.length === 0 ? null : finiteOrNull(Math.hypot(...known));
+}
+
+/** A weight of water near nothing makes heads beyond all bounds: they are not worked out. */
+function finiteOrNull(value: number): number | null {
+  return Number.isFinite(value) ? value : null;
 }
