@@ -1,6 +1,8 @@
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
+import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
 import { MINUS } from '#shared/text/number-text.ts';
+import { measuredFigures } from './measured-words.ts';
 import { pointFigures, pointRemark, type Sort, scheduleColumns, sortedPoints } from './schedule-rows.ts';
 
 /** Text a spreadsheet would run as a formula when it is pasted. */
@@ -14,20 +16,57 @@ export function scheduleTsv(
   document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
   points: readonly PointReading[],
   sort: Sort,
+  measured: readonly MeasuredReading[] = [],
 ): string {
-  const heads = scheduleColumns(document).map((each) => each.label);
-  const rows = sortedPoints(points, sort).map((point) => rowOf(point, document));
+  const heads = scheduleColumns(document, measured.length > 0).map((each) => each.label);
+  const rows = sortedPoints(points, sort, measured).map((point) => [
+    ...rowOf(point, document),
+    ...(measured.length > 0 ? measuredCells(measured, point.id, document) : []),
+  ]);
   return [withDoubtHeads(heads), ...rows].map((cells) => cells.map(cellText).join('\t')).join('\n');
 }
 
 function withDoubtHeads(heads: string[]): string[] {
-  const [point = '', offset = '', elevation = '', drops = '', total = '', head = '', pressure = ''] = heads;
-  return [point, offset, elevation, drops, total, '± at 95 %', head, pressure, '± at 95 %', 'Remark'];
+  const [
+    point = '',
+    offset = '',
+    elevation = '',
+    drops = '',
+    total = '',
+    head = '',
+    pressure = '',
+    ...measured
+  ] = heads;
+  return [
+    point,
+    offset,
+    elevation,
+    drops,
+    total,
+    '± at 95 %',
+    head,
+    pressure,
+    '± at 95 %',
+    'Remark',
+    ...measured.flatMap((each) => [each, '± at 95 %']),
+  ];
 }
+
+function measuredCells(
+  measured: readonly MeasuredReading[],
+  id: string,
+  { unitSystem }: Pick<FlowNetDocument, 'unitSystem'>,
+): string[] {
+  const found = measured.find((each) => each.id === id);
+  if (!found) return ['', '', '', ''];
+  const { head, headPlusMinus, difference, differencePlusMinus } = measuredFigures(found, unitSystem);
+  return [head, headPlusMinus, difference.replace('+', ''), differencePlusMinus].map(number);
+}
+
+const number = (text: string) => text.replace(MINUS, '-').replace(' ± ', '').replace(/^–$/, '');
 
 function rowOf(point: PointReading, document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>): string[] {
   const figures = pointFigures(point, document);
-  const number = (text: string) => text.replace(MINUS, '-').replace(' ± ', '').replace(/^–$/, '');
   return [
     guarded(point.name),
     number(figures.offset),

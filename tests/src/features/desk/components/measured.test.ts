@@ -9,6 +9,7 @@ import {
   scheduleColumns,
   sortedPoints,
 } from '#client/features/desk/components/schedule-rows.ts';
+import { scheduleTsv } from '#client/features/desk/components/schedule-text.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { documentEntity, type EntityOf, UNSAID } from '#shared/contract/document.ts';
 import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
@@ -106,6 +107,17 @@ describe('the schedule with measured values', () => {
   it('shows an adverse difference beyond its ± in red, and one within it plainly', () => {
     expect(table([compared()])).toMatch(/text-wrong[^>]*>\+0\.35<span[^>]*> ± 0\.15/);
     expect(table([compared({ beyond: false })])).not.toContain('text-wrong');
+  });
+
+  it('is copied as it is shown: columns of numbers, the sign of the difference as spreadsheets read it', () => {
+    const measured = [compared({ difference: -0.35 })];
+    const [heads, first, second] = scheduleTsv(document, reading.points, ENTERED_ORDER, measured)
+      .split('\n')
+      .map((line) => line.split('\t'));
+    expect(heads?.slice(-4)).toEqual(['Measured, m LD', '± at 95 %', 'Measured − net, m', '± at 95 %']);
+    expect(first?.slice(-4)).toEqual(['114.20', '0.05', '-0.35', '0.15']);
+    expect(second?.slice(-4)).toEqual(['', '', '', '']);
+    expect(heads?.length).toBe(first?.length);
   });
 
   it('sorts by the difference, points without one last either way', () => {
