@@ -100,7 +100,7 @@ describe('dams with upright faces (Dupuit 1863; exact by Charny 1951)', () => {
     expect(Math.abs(b![1] - 3000 - a![1])).toBeLessThan(0.05);
   });
 
-  it('with kh and kv alike in proportion: √(kh·kv)-free, as Dupuit counts kh alone (Charny 1951)', () => {
+  it('of an anisotropic soil pass by kh alone, whatever kv is (the same integral identity)', () => {
     const soil = { ...UNIT_SOIL, kh: 4, kv: 1 };
     const solution = solved({ ...uprightDam(10, 2, 16), soils: [soil] });
     expect(Math.abs(inflowOf(solution, 'headwater') / (4 * 3) - 1)).toBeLessThan(0.003);
