@@ -8,6 +8,7 @@ const PIECES = 48;
  * the mean is ∫2t·(h − h_out)dt. Null as soon as one place cannot be read: a mean over the rest would look right.
  */
 export function meanOverBase(excessAt: (part: number) => number | null): number | null {
+  if (excessAt(1) === null) return null;
   let sum = 0;
   for (let i = 0; i < PIECES; i += 1) {
     const t = (i + 0.5) / PIECES;

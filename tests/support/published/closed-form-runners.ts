@@ -164,7 +164,7 @@ const setOutOf = (published: PublishedCase, image: string, world: string): Contr
 const twoPoints: Runner = (published) => {
   const fit = fitSimilarity(setOutOf(published, 'image col,row', 'world x,z'), false)!;
   const [probe_x, probe_z] = similarityForward(fit, ...places(published, 'probe col,row')[0]!);
-  return { scale: similarityScale(fit), rotation: -degrees(-similarityRotation(fit)), probe_x, probe_z };
+  return { scale: similarityScale(fit), rotation: degrees(similarityRotation(fit)), probe_x, probe_z };
 };
 
 /** Residual statistics of a similarity, n points and 2n − 4 degrees of freedom. */
