@@ -10,7 +10,7 @@ export const netFileText = {
     'A file that was taken out of a desk, without its drawing. A white sheet of the same size is made for it.',
   file: 'Net file (JSON)',
   fileNeeded: 'Choose the file first.',
-  tooLarge: 'The file is larger than 6 MB, which no net is. Choose the file that the desk gave.',
+  tooLarge: 'The file is larger than the 6 MB that are taken. Check that it is the one that the desk gave.',
   unreadable: 'The file could not be read from this device. Choose it again.',
   section: 'Section',
   sectionHint: 'Its letter or name: B–B, Spillway axis.',
