@@ -3,7 +3,12 @@ import type { SheetPx } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
 import { singleInputs } from '#shared/compute/single-inputs.ts';
-import { entitiesOf, type FlowNetDocument, type VersionedEntity } from '#shared/contract/document.ts';
+import {
+  entitiesOf,
+  type FlowNetDocument,
+  singleOf,
+  type VersionedEntity,
+} from '#shared/contract/document.ts';
 
 /** What one coordinate of one known point does to the place of anything on the sheet. */
 export type SetOutCause = {
@@ -54,15 +59,22 @@ export function setOutCauses(document: FlowNetDocument, setOut: SetOut): SetOutC
 export function knownPointHalfWidth(document: FlowNetDocument, setOut: SetOut, map: SectionMap): number {
   const stated = singleInputs(document).count.knownPointAccuracyPx;
   const { residuals } = setOut.reading;
-  const freedom = 2 * residuals.length - PARAMETERS;
+  const along = setOut.reading.unitsPerPx ?? map.unitsPerPx;
+  const up = setOut.reading.unitsPerPxUp ?? along;
+  const scales = singleOf(document, 'setOut')?.value.scales ?? 'equal';
+  const freedom = 2 * residuals.length - (scales === 'equal' ? SIMILARITY_PARAMETERS : TWO_SCALE_PARAMETERS);
   if (freedom < 1) return stated;
-  const squares = residuals.reduce((sum, each) => sum + each.offset ** 2 + each.elevation ** 2, 0);
-  const deviationPx = Math.sqrt(squares / freedom) / map.unitsPerPx;
-  return Math.max(stated, coverageFactor(freedom) * deviationPx);
+  const squares = residuals.reduce(
+    (sum, each) => sum + (each.offset / along) ** 2 + (each.elevation / up) ** 2,
+    0,
+  );
+  return Math.max(stated, coverageFactor(freedom) * Math.sqrt(squares / freedom));
 }
 
-/** Of a similarity: scale, rotation and two shifts. */
-const PARAMETERS = 4;
+/** Scale, rotation and two shifts. */
+const SIMILARITY_PARAMETERS = 4;
+/** The same with a scale for each direction. */
+const TWO_SCALE_PARAMETERS = 5;
 
 function movedMap(document: FlowNetDocument, id: string, axis: number, by: number): SectionMap | null {
   const entity = document.entities[id] as VersionedEntity;
