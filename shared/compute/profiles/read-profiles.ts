@@ -15,6 +15,11 @@ const UNFINISHED = {
   text: 'The net is unfinished: nothing is read along the profile. The findings say what is missing.',
 };
 
+const NOT_FINITE = {
+  code: 'notFinite',
+  text: 'The profile reaches farther than can be worked out. Check its places and the known points.',
+};
+
 /**
  * Reads every finished profile of a document, in order: at each place total head, pressure head, pore pressure
  * u = γw(h − z) and r_u; under a base the resultant of the pressures besides. Above the phreatic line the pressure is 0
@@ -36,9 +41,14 @@ export function profilesRead(
         return { ...about, samples: [], remark: UNFINISHED, uplift: null };
       const places = placesOf(value, prepared.frame.map);
       const samples = places.places.map((place) => sampleAt(place, prepared));
+      if (!samples.every(hasPlace)) return { ...about, samples: [], remark: NOT_FINITE, uplift: null };
       const uplift = use === 'base' ? upliftOn(samples, prepared.ground.gammaW, tailwater) : null;
       return { ...about, samples, remark: remarkOn(places, value), uplift };
     });
+}
+
+function hasPlace({ distance, offset, elevation, at }: ProfileSample): boolean {
+  return [distance ?? 0, offset, elevation, ...at].every(Number.isFinite);
 }
 
 function remarkOn({ places, coarser }: ProfilePlaces, value: EntityOf<'profile'>): ProfileReading['remark'] {

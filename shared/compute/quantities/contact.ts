@@ -32,7 +32,7 @@ export function creepRead({ model, frame, finished, quantities, ground }: Prepar
     return [offset, elevation];
   });
   const { steep, flat, weighted } = creepLength(natural);
-  if (!Number.isFinite(weighted)) return null;
+  if (!Number.isFinite(steep + flat)) return null;
   const { headLost } = quantities;
   return {
     lines: [...contact.lines],

@@ -26,7 +26,16 @@ const UPWARD = Math.cos(Math.PI / 6);
 export function exitsRead(prepared: PreparedNet): ExitReading[] {
   if (!prepared.finished) return [];
   const exitCells = prepared.cells.cells.filter(({ isExit }) => isExit);
-  return exitCellsOf(exitCells, prepared.heads).map((exit, i) => exitRead(exit, exitCells[i]!, prepared));
+  return exitCellsOf(exitCells, prepared.heads)
+    .map((exit, i) => exitRead(exit, exitCells[i]!, prepared))
+    .filter(isFiniteThroughout);
+}
+
+/** A cell whose figures overflow says nothing; the set-out and the levels are questioned elsewhere. */
+function isFiniteThroughout(exit: ExitReading): boolean {
+  return Object.values(exit)
+    .flat()
+    .every((figure) => typeof figure !== 'number' || Number.isFinite(figure));
 }
 
 function exitRead(exit: ExitCell, cell: NetCell, prepared: PreparedNet): ExitReading {

@@ -41,7 +41,9 @@ const LEVEL_SLOPE = 0.05;
  */
 export function heavePrisms(prepared: PreparedNet): HeaveReading[] {
   if (!prepared.finished) return [];
-  return wallsAtOutlets(prepared).map((wall) => prismBeside(wall, prepared));
+  return wallsAtOutlets(prepared)
+    .map((wall) => prismBeside(wall, prepared))
+    .filter(({ at, depth, width }) => [...at, depth, width].every(Number.isFinite));
 }
 
 function wallsAtOutlets({ model, frame, ground }: PreparedNet): Wall[] {

@@ -258,3 +258,36 @@ describe('the places of a profile', () => {
     expect(places[14]!.at).toEqual([2, 1]);
   });
 });
+
+describe('profiles of any sort on any net', () => {
+  const far = fc.oneof(
+    fc.double({ min: -1e9, max: 1e9, noNaN: true }),
+    fc.double({ min: -30, max: 130, noNaN: true }),
+  );
+  const place = fc.tuple(far, far);
+  const document = exactNetDocument(apron, { pxPerUnit: 55 });
+
+  it('are read without an exception, and the reading keeps to its schema', () => {
+    fc.assert(
+      fc.property(
+        fc.array(place, { maxLength: 4 }),
+        fc.tuple(place, place),
+        fc.option(fc.double({ min: 1e-9, max: 1e6, noNaN: true })),
+        fc.constantFrom('section', 'sheet', 'grid'),
+        fc.constantFrom('base', 'slipSurface', 'borehole'),
+        (points, corners, spacing, on, use) => {
+          const at: EntityOf<'profile'>['place'] = on === 'grid' ? { on, corners } : { on, points };
+          const few = {
+            ...profileOf({ place: at, use }),
+            spacing: spacing === null ? null : Math.max(spacing, 1),
+          };
+          const reading = readNet(withAdded(document, few));
+          expect(netReading.safeParse(reading).error).toBeUndefined();
+          expect(reading.profiles).toHaveLength(1);
+          expect(reading.profiles[0]!.samples.length).toBeLessThanOrEqual(MOST_PLACES);
+        },
+      ),
+      { numRuns: 12 },
+    );
+  });
+});
