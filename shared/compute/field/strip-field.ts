@@ -1,8 +1,15 @@
 import { meshStrip, type StripMesh, type StripSurroundings } from '#shared/compute/field/strip-mesh.ts';
 import { type FieldPlace, placesOf } from '#shared/compute/field/strip-places.ts';
-import { type MeshTensor, stiffnessOf, systemOf } from '#shared/compute/field/strip-system.ts';
+import {
+  type MeshTensor,
+  type StripSystem,
+  stiffnessOf,
+  systemOf,
+} from '#shared/compute/field/strip-system.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
 import { conjugateGradient } from '#shared/compute/solve/conjugate-gradient.ts';
+import { nestedDissection } from '#shared/compute/solve/nested-dissection.ts';
+import { choleskyOf } from '#shared/compute/solve/sparse-cholesky.ts';
 
 /** Heads on the boundary of a strip, any one unit; places in working pixels. */
 export type StripHeads = {
@@ -24,11 +31,13 @@ export type StripField = {
 
 /** The equations are solved to this part of their right side: a thousandth of what any drawing tells. */
 const SOLVED_TO = 1e-8;
+/** Steps of conjugate gradients; the strips of most nets take a hundred or two. */
+const MOST_STEPS = 500;
 
 /**
  * The head between two neighbouring equipotentials that satisfies ∇·(K∇h) = 0 with both lines held at their heads,
  * walls and the phreatic line closed to flow, and open ends taken as closed. Linear triangles on a constrained
- * triangulation, finer towards tips and sharp corners; conjugate gradients. `tensorAt`: K in the frame of the strip,
+ * triangulation, finer towards tips and sharp corners; conjugate gradients, or directly. `tensorAt`: K in the frame of the strip,
  * null where it is the same everywhere and in all directions. Null when the strip cannot be meshed or the solution does
  * not settle. Source: Zienkiewicz, Mayer and Cheung (1966), seepage by finite elements.
  */
@@ -41,19 +50,30 @@ export function solveStrip(
   const mesh = meshStrip(strip, around);
   if (mesh === null || mesh.triangles.length === 0) return null;
   const held = heldHeads(mesh, heads);
-  const { rows, right, rowOf } = systemOf(mesh, stiffnessOf(mesh, tensorAt), held);
-  const { x, converged } = conjugateGradient(
-    rows,
-    right,
-    new Float64Array(rows.n).fill(meanOf(held)),
-    SOLVED_TO,
-  );
-  if (!converged) return null;
+  const system = systemOf(mesh, stiffnessOf(mesh, tensorAt), held);
+  const guess = new Float64Array(system.rows.n).fill(meanOf(held));
+  const iterated = conjugateGradient(system.rows, system.right, guess, SOLVED_TO, MOST_STEPS);
+  const x = iterated.converged ? iterated.x : solveDirectly(mesh, system);
+  if (x === null) return null;
   const atCorners = Float64Array.from(mesh.unknowns, (unknown) => {
-    const row = rowOf[unknown]!;
+    const row = system.rowOf[unknown]!;
     return row >= 0 ? x[row]! : held[unknown]!;
   });
-  return { unknowns: rows.n, at: placesOf(mesh, atCorners) };
+  return { unknowns: system.rows.n, at: placesOf(mesh, atCorners) };
+}
+
+/** Where the water has a long way round walls, the steps would be many: then the equations are solved directly. */
+function solveDirectly(mesh: StripMesh, { rows, right, rowOf }: StripSystem): Float64Array | null {
+  const x = new Float64Array(rows.n);
+  const y = new Float64Array(rows.n);
+  mesh.unknowns.forEach((unknown, corner) => {
+    const row = rowOf[unknown]!;
+    if (row < 0) return;
+    const point = mesh.triangles[corner]!;
+    x[row] = mesh.xy[2 * point]!;
+    y[row] = mesh.xy[2 * point + 1]!;
+  });
+  return choleskyOf(rows, nestedDissection(rows, x, y))?.solve(right) ?? null;
 }
 
 /** Head of each unknown that lies on a held line; NaN for the others. */

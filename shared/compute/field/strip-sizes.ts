@@ -18,6 +18,8 @@ const ACROSS = 6;
 /** Growth of the elements away from a place where the gradient is endless, and their size there, pixels. */
 const GROWTH = 0.3;
 const LEAST_SIZE_PX = 0.25;
+/** Among more steep places than this, as in a maze of walls, each gets coarser elements in turn. */
+const MANY_STEEP = 16;
 /**
  * Near a corner the head varies with the distance to the power π/θ, θ the angle inside, or π/2θ where a held line meets
  * a closed one. Below this power it is too steep for the usual elements.
@@ -43,10 +45,11 @@ export function sizesOf(strip: Strip, inner: readonly Pair[][], slack: number): 
   const after = polylineOf(thinned(verticesOf(strip.afterShape), slack)) ?? strip.afterShape;
   const widthAt = (x: number, y: number) =>
     nearestOnPolyline(before, x, y).distance + nearestOnPolyline(after, x, y).distance;
+  const least = LEAST_SIZE_PX * Math.max(1, steep.length / MANY_STEEP);
   const sizeAt = (x: number, y: number) => {
     let toCorner = Number.POSITIVE_INFINITY;
     for (const corner of steep) toCorner = Math.min(toCorner, Math.hypot(corner[0] - x, corner[1] - y));
-    return Math.max(LEAST_SIZE_PX, Math.min(widthAt(x, y) / ACROSS, 0.5 * LEAST_SIZE_PX + GROWTH * toCorner));
+    return Math.max(least, Math.min(widthAt(x, y) / ACROSS, 0.5 * least + GROWTH * toCorner));
   };
   return { widthAt, sizeAt };
 }

@@ -14,7 +14,7 @@ import {
 /** In drops: coordinates of 1e4 px to double precision, times the steepest cell, with room to spare. */
 const SAME = 1e-9;
 /** In drops: the elements of the field lie otherwise on a turned sheet, and it is as exact as they are small. */
-const SAME_FIELD = 0.008;
+const SAME_FIELD = 0.015;
 
 /** Drops lost at each point, in the order of the points' names; the same places are asked in every variant. */
 function dropsOf(reading: NetReading): Array<{ byHand: number; byField: number }> {
