@@ -6,7 +6,7 @@ export const explanationText = {
   open: 'Show on the sheet',
   notRead: 'There is no figure here.',
   twoWays: 'Two readings of the same lines',
-  way: 'By',
+  way: 'Reading',
   hand: 'Hand’s rule',
   field: 'The field, which is the figure',
   noField: 'The field (not solved here)',

@@ -23,6 +23,8 @@ export const independentText = {
   showDifferences: 'Differences of head',
   differencesHint: (part: readonly string[]) =>
     `Red where the traced net reads higher, blue where it reads lower; darker beyond ${part.join(', ')} of the head lost.`,
+  nowhere: (part: string) => `Nowhere more than ${part} of the head lost.`,
+  greatest: (above: string, below: string) => `Greatest: ${above} and ${below}.`,
   noDifferences: 'No differences to draw: the traced net gives no heads yet.',
   heads: 'Heads at the reading points',
   sign: 'Difference is traced minus independent. It tells how far the net is from the solution, and is no part of its ±.',
@@ -43,8 +45,10 @@ export const independentText = {
   noPermeability: 'No permeability is entered: heads are right, seepage has no figure.',
   exits: 'Steepest exit gradients',
   exitsLead: 'At a place, positive outwards of the ground.',
+  exitPlace: 'Show',
+  exitPlaceOf: (boundary: string) => `Show the steepest exit at ${boundary}`,
   exit: { boundary: 'Boundary', gradient: 'Gradient', place: 'Place' },
-  singular: 'beside a corner where it has no bound',
+  singular: 'a tenth of its length away from the corner, where it has no bound',
   net: 'Computed net',
   netCounts: (drops: number, channels: string | null) =>
     channels === null
@@ -52,9 +56,10 @@ export const independentText = {
       : `${drops} drops, ${channels} channels of square cells.`,
   usesPhreatic:
     'No ground closes the section above: the traced phreatic line was taken as its upper boundary, as it is drawn.',
-  quality: (imbalance: string, nodes: string) =>
-    `Inflow and outflow agree within ${imbalance}; ${nodes} nodes.`,
+  quality: (imbalance: string, nodes: string) => `Inflow and outflow differ by ${imbalance}; ${nodes} nodes.`,
   gap: (part: string) => `Bound of the error of the seepage: ${part}.`,
   surface: (length: string) => `On the free surface head and elevation agree within ${length}.`,
   percent: (part: number, decimals: number) => `${fixedText(100 * part, decimals)} %`,
+  /** A small part, never shown as nothing. */
+  within: (part: number) => (part < 1e-4 ? 'less than 0.01 %' : `${fixedText(100 * part, 2)} %`),
 } as const;

@@ -12,12 +12,16 @@ import { readSetOut } from '#shared/compute/set-out.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
-/** The steepest place at which water comes out at one boundary. Gradient positive outwards; null without a bound. */
+/**
+ * The steepest place at which water comes out at one boundary, gradient positive outwards. Where the boundary has a floor
+ * edge or a re-entrant corner, at which the gradient has no bound, places nearer to it than a tenth of the boundary are
+ * left out: their gradient would tell the size of the mesh.
+ */
 export type SteepestExit = {
   readonly id: string;
   readonly at: SheetPoint;
-  readonly gradient: number | null;
-  /** True when the boundary ends at a floor edge or corner, where the gradient has no bound. */
+  readonly gradient: number;
+  /** True when places beside such a corner were left out. */
   readonly hasSingular: boolean;
 };
 
@@ -77,17 +81,30 @@ function dropsOf({ quantities }: NetReading): number {
   return quantities.drops ?? quantities.tracedDrops ?? USUAL_DROPS;
 }
 
+/** Part of the extent of a boundary that is left out beside a place where the gradient has no bound. */
+const LEFT_OUT = 0.1;
+
 function steepestExits(solution: SectionSolution, toSheet: (place: Pair) => SheetPx): SteepestExit[] {
   return [...new Set(solution.exits.map(({ id }) => id))].flatMap((id) => {
     const own = solution.exits.filter((exit) => exit.id === id);
-    const bounded = own.filter(({ gradient }) => gradient !== null);
-    const hasSingular = own.some(({ singular }) => singular);
-    const worst = bounded.reduce(
-      (most, exit) => ((exit.gradient ?? 0) > (most?.gradient ?? 0) ? exit : most),
-      bounded[0] ?? own[0],
-    );
-    if (worst === undefined) return [];
+    const singular = own.filter((exit) => exit.singular);
+    const least = LEFT_OUT * extentOf(own.map(({ at }) => at));
+    let worst: { at: Pair; gradient: number } | null = null;
+    for (const { at, gradient } of own) {
+      if (gradient === null || singular.some((corner) => distance(corner.at, at) < least)) continue;
+      if (worst === null || gradient > worst.gradient) worst = { at, gradient };
+    }
+    if (worst === null) return [];
     const [x, y] = toSheet(worst.at);
-    return [{ id, at: [x, y], gradient: worst.gradient, hasSingular }];
+    return [{ id, at: [x, y], gradient: worst.gradient, hasSingular: singular.length > 0 }];
   });
+}
+
+function extentOf(places: readonly Pair[]): number {
+  const [xs, ys] = [places.map(([x]) => x), places.map(([, y]) => y)];
+  return Math.hypot(Math.max(...xs) - Math.min(...xs), Math.max(...ys) - Math.min(...ys));
+}
+
+function distance([x, y]: Pair, [ox, oy]: Pair): number {
+  return Math.hypot(x - ox, y - oy);
 }

@@ -2,9 +2,9 @@ import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
 import { CheckField } from '#client/components/field.tsx';
 import { independentText as text } from '#client/text/independent.ts';
-import { STEPS } from '#shared/compute/beside/difference-picture.ts';
+import { type DifferencePicture, STEPS } from '#shared/compute/beside/difference-picture.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText, signedText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import type { DeskChecks, IndependentResult, IndependentState } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
@@ -98,7 +98,7 @@ function Result({ result: { beside }, store, checks, onPlace }: ResultProps) {
   const document = useStore(store, (state) => state.document);
   return (
     <>
-      <Switches beside={beside} checks={checks} />
+      <Switches beside={beside} checks={checks} unit={unitNames(document.unitSystem).length} />
       <MarginSection title={text.heads}>
         <HeadTable comparison={beside.comparison} document={document} />
       </MarginSection>
@@ -120,9 +120,29 @@ function Result({ result: { beside }, store, checks, onPlace }: ResultProps) {
   );
 }
 
-function Switches({ beside, checks }: { beside: IndependentResult['beside']; checks: DeskChecks }) {
-  const { netShown, differencesShown } = useStore(checks);
+/** How the tints are to be read, and the greatest differences; or that there are none to draw. */
+function differencesHint(picture: DifferencePicture, unit: string): string {
   const steps = STEPS.map((part) => text.percent(part, 1));
+  const { compared, greatestAbove, greatestBelow } = picture;
+  if (compared === 0) return text.noDifferences;
+  const parts = [greatestAbove, greatestBelow].map((found) => Math.abs(found?.part ?? 0));
+  if (Math.max(...parts) < STEPS[0]) return text.nowhere(text.percent(STEPS[0], 1));
+  const [above, below] = [greatestAbove, greatestBelow].map(
+    (found) => `${signedText(found?.head ?? 0, 2)} ${unit}`,
+  );
+  return `${text.differencesHint(steps)} ${text.greatest(above ?? '', below ?? '')}`;
+}
+
+function Switches({
+  beside,
+  checks,
+  unit,
+}: {
+  beside: IndependentResult['beside'];
+  checks: DeskChecks;
+  unit: string;
+}) {
+  const { netShown, differencesShown } = useStore(checks);
   const { picture } = beside;
   return (
     <MarginSection title={text.show}>
@@ -134,7 +154,7 @@ function Switches({ beside, checks }: { beside: IndependentResult['beside']; che
       />
       <CheckField
         label={text.showDifferences}
-        hint={picture.compared > 0 ? text.differencesHint(steps) : text.noDifferences}
+        hint={differencesHint(beside.picture, unit)}
         disabled={picture.compared === 0}
         checked={differencesShown && picture.compared > 0}
         onChange={(event) => checks.showDifferences(event.target.checked)}
@@ -152,8 +172,8 @@ function Quality({ beside, document }: { beside: IndependentResult['beside']; do
       <p className="m-0">{text.netCounts(net.drops, channels)}</p>
       {usesPhreaticLine ? <p className="m-0 text-attention">{text.usesPhreatic}</p> : null}
       <Aside>
-        {text.quality(text.percent(imbalance, 2), String(nodeCount))}{' '}
-        {gap === null ? '' : text.gap(text.percent(gap, 2))}{' '}
+        {text.quality(text.within(imbalance), String(nodeCount))}{' '}
+        {gap === null ? '' : text.gap(text.within(gap))}{' '}
         {surfaceMisfit === null ? '' : text.surface(`${fixedText(surfaceMisfit, 3)} ${length}`)}
       </Aside>
     </MarginSection>

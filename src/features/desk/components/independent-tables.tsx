@@ -115,14 +115,19 @@ export function ExitTable({
     <MarginTable caption={text.exits} heads={[text.exit.boundary, text.exit.gradient, text.exit.place]}>
       {exits.map(({ id, at, gradient, hasSingular }) => (
         <tr key={id}>
-          <RowHead>{boundaryName(document, id)}</RowHead>
-          <FigureCell>
-            {fixedText(gradient, 2)}
+          <RowHead>
+            {boundaryName(document, id)}
             {hasSingular ? <span className="block text-attention">{text.singular}</span> : null}
-          </FigureCell>
+          </RowHead>
+          <FigureCell>{fixedText(gradient, 2)}</FigureCell>
           <FigureCell>
-            <button type="button" className="touch underline" onClick={() => onPlace(at)}>
-              {text.showPlace}
+            <button
+              type="button"
+              aria-label={text.exitPlaceOf(boundaryName(document, id))}
+              className="touch underline"
+              onClick={() => onPlace(at)}
+            >
+              {text.exitPlace}
             </button>
           </FigureCell>
         </tr>

@@ -1,6 +1,6 @@
 import { checkMarkText as text } from '#client/text/net-check.ts';
 import type { BesideSolution } from '#shared/compute/beside/beside-solution.ts';
-import type { PlacedDifference } from '#shared/compute/beside/difference-picture.ts';
+import { type PlacedDifference, STEPS } from '#shared/compute/beside/difference-picture.ts';
 import type { PointWays } from '#shared/compute/net/point-ways.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { NetCheckReading, NetFault } from '#shared/contract/reading-net-check.ts';
@@ -92,7 +92,9 @@ export function differenceGuides({ picture }: BesideSolution, unit: string): Gui
       return outlines.length > 0 && tone !== undefined ? [{ id: `${kind} ${i}`, tone, outlines }] : [];
     });
   const mark = (id: string, tone: GuideTone, found: PlacedDifference | null): GuideMark[] =>
-    found === null ? [] : [{ id, tone, at: found.at, text: text.difference(found.head, unit) }];
+    found === null || Math.abs(found.part) < STEPS[0]
+      ? []
+      : [{ id, tone, at: found.at, text: text.difference(found.head, unit) }];
   return {
     areas: [...areas('above', ABOVE, picture.above), ...areas('below', BELOW, picture.below)],
     lines: [],

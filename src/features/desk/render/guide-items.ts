@@ -36,7 +36,7 @@ export function guideItems(guides: GuidesByOwner): { under: SceneItem[]; over: S
     each.marks.map(
       ({ id, tone, at, text }): SceneItem => ({
         id: `${owner} mark ${id}`,
-        shape: 'label',
+        shape: 'callout',
         at,
         text,
         colour: toneColour(tone),

@@ -156,6 +156,7 @@ export const MARK_PAINTERS: Record<MarkShape, Painter> = {
   knownPoint,
   readingPoint,
   label,
+  callout: label,
   balloon,
   handle,
   chosenHandle,

@@ -26,7 +26,7 @@ const BALLOON_OFFSETS = [215, 325, 180, 0, 145, 35, 270, 90].map((degrees) => {
 
 /**
  * Gives the words of a scene places in which they do not cover one another or a point: names of points first, then
- * notes, then the heads at the lines' ends, which can give way farthest. `zoom`: screen pixels per sheet pixel.
+ * notes, then what explains a place, then the heads at the lines' ends, which can give way farthest. `zoom`: screen pixels per sheet pixel.
  */
 export function placeWords(items: readonly SceneItem[], zoom: number): SceneItem[] {
   const marks = items.filter((item): item is SceneMark => item.shape !== 'line' && item.shape !== 'area');
@@ -35,7 +35,12 @@ export function placeWords(items: readonly SceneItem[], zoom: number): SceneItem
     rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX),
   );
   const offsets = new Map<string, readonly [number, number]>();
-  for (const group of [points, ofShape(marks, 'balloon'), ofShape(marks, 'label')]) {
+  for (const group of [
+    points,
+    ofShape(marks, 'balloon'),
+    ofShape(marks, 'callout'),
+    ofShape(marks, 'label'),
+  ]) {
     const placed = placeApart(
       group.map((mark) => placeable(mark, zoom)),
       taken,
@@ -58,6 +63,10 @@ function placeable(mark: SceneMark, zoom: number): Placeable {
   const at = { id: mark.id, x: mark.at[0] * zoom, y: mark.at[1] * zoom };
   if (mark.shape === 'balloon') {
     return { ...at, widthPx: BALLOON_SIZE_PX, heightPx: BALLOON_SIZE_PX, offsets: BALLOON_OFFSETS };
+  }
+  if (mark.shape === 'callout') {
+    const widthPx = labelWidthPx(mark.text);
+    return { ...at, widthPx, heightPx: LABEL_HEIGHT_PX, offsets: calloutOffsets(widthPx) };
   }
   if (mark.shape === 'label') {
     return { ...at, widthPx: labelWidthPx(mark.text), heightPx: LABEL_HEIGHT_PX, offsets: LABEL_OFFSETS };
@@ -87,4 +96,21 @@ function besideFirst(width: number): ReadonlyArray<readonly [number, number]> {
     [0, -19],
     [0, 19],
   ];
+}
+
+const CALLOUT_RINGS_PX = [18, 34, 52, 72];
+
+/** Close about the place that it explains, above it first; farther rings where there is no room. */
+function calloutOffsets(width: number): ReadonlyArray<readonly [number, number]> {
+  return CALLOUT_RINGS_PX.flatMap((reach) => {
+    const side = width / 2 + reach - 8;
+    return [
+      [0, -reach],
+      [side, -reach / 2],
+      [-side, -reach / 2],
+      [0, reach],
+      [side, reach / 2],
+      [-side, reach / 2],
+    ] as const;
+  });
 }

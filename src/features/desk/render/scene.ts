@@ -16,6 +16,7 @@ export type MarkShape =
   | 'knownPoint'
   | 'readingPoint'
   | 'label'
+  | 'callout'
   | 'balloon'
   | 'handle'
   | 'chosenHandle'

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { type BesideSolution, besideSolution } from '#shared/compute/beside/beside-solution.ts';
 import { STEPS } from '#shared/compute/beside/difference-picture.ts';
 import { sectionOfDocument } from '#shared/compute/independent/section-of-document.ts';
-import { solveSection } from '#shared/compute/independent/solve-section.ts';
+import { type SolveOptions, solveSection } from '#shared/compute/independent/solve-section.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
@@ -14,10 +14,10 @@ const { net, pxPerUnit } = EXACT_NETS[0]!;
 const PLACE = net.placeAt(4.4, 1.1);
 const drawn = exactNetDocument(net, { pxPerUnit, readings: [{ at: PLACE, clicked: false }] });
 
-function beside(document: FlowNetDocument): BesideSolution {
+function beside(document: FlowNetDocument, options: SolveOptions = {}): BesideSolution {
   const section = sectionOfDocument(document);
   if (!section.ok) throw new Error(section.text);
-  const solution = solveSection(section.problem);
+  const solution = solveSection(section.problem, options);
   if (!solution.ok) throw new Error(solution.text);
   return besideSolution(document, readNet(document), section, solution)!;
 }
@@ -50,6 +50,16 @@ describe('a traced net beside the independent solution of its section', () => {
       // Vertices of the traces lie some 40 px apart.
       expect(nearest).toBeLessThan(30);
     }
+  });
+
+  it('gives no gradient of the place beside a corner, where the mesh would decide it', () => {
+    // Water leaves into the drain, whose edge is the focus of the parabola: there the gradient has no bound.
+    const [exit] = exact.exits;
+    expect(exact.exits).toHaveLength(1);
+    expect(exit!.hasSingular).toBe(true);
+    const finer = beside(drawn, { accuracy: 1e-5 }).exits[0]!;
+    expect(finer.gradient / exit!.gradient).toBeGreaterThan(0.8);
+    expect(finer.gradient / exit!.gradient).toBeLessThan(1.25);
   });
 
   it('shows where one line is drawn out of place, with the sign of traced minus independent', () => {
