@@ -3,16 +3,24 @@ import type { ProfileReading, ProfileSample } from '#shared/contract/reading-qua
 import { type CsvCell, csvText } from '#shared/text/csv.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
-/**
- * A profile as CSV for a stability program: one row for each place in the order of the profile, units in the heads of
- * the columns, decimal points, figures rounded to a tenth of what a reading can mean. Above the phreatic line the
- * pressure is 0 and the remark says so; where nothing could be read the cells are empty, never 0, and the remark says
- * why.
- */
+/** A profile as CSV for a stability program: its rows as `profileRows` gives them, with decimal points. */
 export function profileCsv(
   document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
   profile: Pick<ProfileReading, 'name' | 'samples'>,
 ): string {
+  return csvText(profileRows(document, profile));
+}
+
+/**
+ * A profile as a table for a stability program: one row for each place in the order of the profile, units in the heads of
+ * the columns, figures rounded to a tenth of what a reading can mean. Above the phreatic line the
+ * pressure is 0 and the remark says so; where nothing could be read the cells are empty, never 0, and the remark says
+ * why.
+ */
+export function profileRows(
+  document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
+  profile: Pick<ProfileReading, 'name' | 'samples'>,
+): CsvCell[][] {
   const units = unitNames(document.unitSystem);
   const elevation = elevationUnit(document.unitSystem, document.datum);
   const head: CsvCell[] = [
@@ -26,7 +34,7 @@ export function profileCsv(
     'r_u',
     'Remark',
   ];
-  return csvText([head, ...profile.samples.map((sample) => rowOf(profile.name, sample))]);
+  return [head, ...profile.samples.map((sample) => rowOf(profile.name, sample))];
 }
 
 function rowOf(name: string, sample: ProfileSample): CsvCell[] {

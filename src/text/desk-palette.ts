@@ -29,6 +29,7 @@ export const deskPaletteText = {
     phreaticLine: 'Phreatic line',
     boundary: 'Boundary',
     readingPoint: 'Reading point',
+    profile: 'Profile',
     soilPlace: 'Place of a soil',
     note: 'Note',
   } satisfies Record<PaletteTool, string>,
@@ -55,6 +56,8 @@ export const deskPaletteText = {
     boundary:
       'Click along the boundary. The net needs one under headwater and an outlet: tailwater, drain or free outflow.',
     readingPoint: 'Click where the pressure is wanted, or type its offset and elevation in the schedule.',
+    profile:
+      'Click along a base, a slip surface, a filter boundary or a borehole. It snaps to traced lines; Ctrl stops that, Shift keeps level, plumb or 45°.',
     soilPlace: 'Click inside each region of the soil. Backspace takes the last place back, Escape ends it.',
     note: 'Click a point, a line or a place to write a note about it.',
   } satisfies Record<ToolId, string>,

@@ -15,7 +15,7 @@ export type PointerWords = {
 export const deskViewText = {
   sheetRole: 'drawing',
   keysHelp:
-    'Arrow keys move the sheet, plus and minus zoom, zero shows it whole. Letters choose tools: K known points, E equipotential, F flow line, P phreatic line, B boundary, R reading point, N note. Enter finishes a line, Backspace takes back its last point, Escape cancels.',
+    'Arrow keys move the sheet, plus and minus zoom, zero shows it whole. Letters choose tools: K known points, E equipotential, F flow line, P phreatic line, B boundary, R reading point, L profile, N note. Enter finishes a line, Backspace takes back its last point, Escape cancels.',
   zoomIn: 'Zoom in',
   zoomOut: 'Zoom out',
   fit: 'Fit',

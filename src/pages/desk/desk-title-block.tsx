@@ -4,6 +4,7 @@ import { useStore } from 'zustand';
 import { FORM_OF_CELL } from '#client/features/desk/components/cell-steps.ts';
 import { TitleBlock } from '#client/features/desk/components/title-block.tsx';
 import { type CellId, titleBlockCells } from '#client/features/desk/components/title-block-cells.ts';
+import { flowUnitChoice } from '#client/features/desk/model/flow-unit.ts';
 import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { paths } from '#client/lib/paths.ts';
@@ -29,10 +30,11 @@ export function DeskTitleBlock({
   const document = useStore(session.store, (state) => state.document);
   const reading = useStore(session.store, (state) => state.reading);
   const stale = useStore(session.store, (state) => state.readingOf !== state.documentRevision);
+  const flowUnit = useStore(flowUnitChoice, (state) => state.unit);
   const savedAt = useSavedAt(session.saving);
   const cells = useMemo(
-    () => titleBlockCells(document, reading, titleFactsOf(detail, person, savedAt)),
-    [document, reading, detail, person, savedAt],
+    () => titleBlockCells(document, reading, { ...titleFactsOf(detail, person, savedAt), flowUnit }),
+    [document, reading, detail, person, savedAt, flowUnit],
   );
   const step = (id: CellId) => {
     const form = FORM_OF_CELL[id];

@@ -5,10 +5,10 @@ import { useNotice } from '#client/components/notice.tsx';
 import { netQuery } from '#client/features/desk/api/net-queries.ts';
 import { ChosenLineBar } from '#client/features/desk/components/chosen-line-bar.tsx';
 import { ConflictDialog } from '#client/features/desk/components/conflict-dialog.tsx';
+import { FiguresPane } from '#client/features/desk/components/figures-pane.tsx';
 import { MarginFormPane } from '#client/features/desk/components/margin-form.tsx';
 import { ReadOnlyLine } from '#client/features/desk/components/read-only-line.tsx';
 import { SavingLine } from '#client/features/desk/components/saving-line.tsx';
-import { SchedulePane } from '#client/features/desk/components/schedule-pane.tsx';
 import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
 import { StoreNotice } from '#client/features/desk/components/store-notice.tsx';
 import { ToolPalette } from '#client/features/desk/components/tool-palette.tsx';
@@ -127,11 +127,12 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             />
           }
           schedule={
-            <SchedulePane
+            <FiguresPane
               store={store}
-              className="h-full"
+              netName={`${sectionName} ${detail.net.name}`}
               onDownload={() => void flush().then(() => downloadFrom(apiUrl(`/nets/${netId}/schedule.csv`)))}
-              onAdd={readOnly ? null : () => show({ shows: 'form', form: { form: 'point' } })}
+              onForm={readOnly ? null : (form) => show({ shows: 'form', form })}
+              onSheet={() => setPane('sheet')}
             />
           }
           notes={

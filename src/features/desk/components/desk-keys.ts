@@ -11,6 +11,7 @@ export const TOOL_KEYS: Readonly<Record<string, ToolId>> = {
   p: 'phreaticLine',
   b: 'boundary',
   r: 'readingPoint',
+  l: 'profile',
   n: 'note',
   v: 'select',
 };

@@ -13,6 +13,7 @@ import { MeasuredForm } from './measured-form.tsx';
 import { NetCheckPane } from './net-check-pane.tsx';
 import { PermeabilityForm } from './permeability-form.tsx';
 import { PointForm } from './point-form.tsx';
+import { GridProfileForm, PasteProfileForm } from './profile-forms.tsx';
 import { ReadingPane } from './reading-pane.tsx';
 import { SetOutForm } from './set-out-form.tsx';
 import { SoilForm } from './soil-form.tsx';
@@ -21,6 +22,7 @@ import { WaterForm } from './water-form.tsx';
 /** What is open in the margin in the place of the notes. */
 export type MarginForm =
   | { form: 'loadCase' | 'water' | 'permeability' | 'count' | 'point' | 'findings' | 'independent' }
+  | { form: 'pasteProfile' | 'gridProfile' }
   /** `placedId`: the known point just placed, whose offset is typed next. */
   | { form: 'setOut'; placedId?: string }
   | { form: 'line'; lineId: string }
@@ -72,6 +74,10 @@ export function MarginFormPane({
     store.select({ kind: 'line', ids: [lineId] });
     onOpen({ form: 'line', lineId });
   };
+  const showProfile = (id: string) => {
+    store.select({ kind: 'profile', ids: [id] });
+    onClose();
+  };
   switch (open.form) {
     case 'loadCase':
       return <LoadCasePane detail={detail} disabled={disabled} flush={flush} onClose={onClose} />;
@@ -112,6 +118,10 @@ export function MarginFormPane({
       return <CountForm {...form} />;
     case 'point':
       return <PointForm {...form} newId={store.newId} />;
+    case 'pasteProfile':
+      return <PasteProfileForm {...form} newId={store.newId} onMade={showProfile} />;
+    case 'gridProfile':
+      return <GridProfileForm {...form} newId={store.newId} onMade={showProfile} />;
     case 'measured':
       return <MeasuredForm {...form} key={open.pointId} pointId={open.pointId} />;
     case 'line':

@@ -1,6 +1,7 @@
 import { permeabilityText as text } from '#client/text/desk-forms.ts';
 import { singleOf } from '#shared/contract/document.ts';
 import type { DeskFormProps } from './desk-form.ts';
+import { FlowUnitField } from './flow-unit-field.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
 import type { MarginForm } from './margin-form.tsx';
 import { SeepageDoubt } from './seepage-doubt.tsx';
@@ -25,6 +26,7 @@ export function PermeabilityForm({ newId, onOpenSoil, onOpen, ...form }: Permeab
       <p className="m-0 text-ink-2">{text.lead}</p>
       <FormFindings findings={findingsFor(reading?.findings, 'permeability', 'seepage')} />
       <SoilFields soil={held.value} unitSystem={document.unitSystem} disabled={disabled} change={change} />
+      <FlowUnitField unitSystem={document.unitSystem} />
       <SeepageDoubt reading={reading} onOpen={disabled ? null : onOpen} />
       <SoilList document={document} disabled={disabled} run={run} newId={newId} onOpenSoil={onOpenSoil} />
     </FormPane>

@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'react';
+import { type ReactNode, useEffect, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { buttonClass } from '#client/components/button.tsx';
 import { useNotice } from '#client/components/notice.tsx';
@@ -19,10 +19,12 @@ interface SchedulePaneProps {
   /** Opens the form for a typed point; null where nothing may be added. */
   onAdd: (() => void) | null;
   className?: string;
+  /** In the place of the heading: the heading beside the other tables below the sheet. */
+  views?: ReactNode;
 }
 
 /** The schedule below the sheet, with what makes its figures and what may be taken from it. */
-export function SchedulePane({ store, onDownload, onAdd, className = '' }: SchedulePaneProps) {
+export function SchedulePane({ store, onDownload, onAdd, className = '', views }: SchedulePaneProps) {
   const { document, reading, documentRevision, readingOf, readingFailed, readOnly, selection } =
     useStore(store);
   const [sort, setSort] = useState<Sort>(ENTERED_ORDER);
@@ -50,7 +52,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '' }: Sched
       className={`overflow-auto bg-film ${className}`}
     >
       <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
-        <h2 className="m-0 text-base font-bold">{text.title}</h2>
+        {views ?? <h2 className="m-0 text-base font-bold">{text.title}</h2>}
         <span className="text-ink-2">{leadOf(document, reading, stale)}</span>
         <span className="ml-auto flex flex-wrap gap-2">
           {onAdd ? <SmallButton onClick={onAdd}>{text.add}</SmallButton> : null}
@@ -99,7 +101,8 @@ export function ScheduleState({ reading, failed }: { reading: NetReading | null;
   );
 }
 
-function SmallButton({ onClick, children }: { onClick: () => void; children: string }) {
+/** A button beside the heading of a table below the sheet. */
+export function SmallButton({ onClick, children }: { onClick: () => void; children: string }) {
   return (
     <button type="button" className={buttonClass('quiet', 'px-2 py-[2px] text-sm')} onClick={onClick}>
       {children}

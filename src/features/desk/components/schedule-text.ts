@@ -81,5 +81,12 @@ function rowOf(point: PointReading, document: Pick<FlowNetDocument, 'unitSystem'
   ];
 }
 
+/** Rows as text for pasting into a spreadsheet, tabs between the columns; what would run as a formula is guarded. */
+export function tableTsv(rows: ReadonlyArray<ReadonlyArray<string | number | null>>): string {
+  const cell = (held: string | number | null) =>
+    typeof held === 'string' ? cellText(guarded(held)) : held === null ? '' : String(held);
+  return rows.map((row) => row.map(cell).join('\t')).join('\n');
+}
+
 const guarded = (text: string) => (FORMULA_START.test(text) ? `'${text}` : text);
 const cellText = (text: string) => text.replace(/[\t\r\n]+/g, ' ');

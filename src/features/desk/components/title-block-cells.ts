@@ -1,10 +1,12 @@
 import { shortName } from '#client/lib/initials.ts';
 import { titleBlockText as text } from '#client/text/title-block.ts';
+import { type FlowUnit, flowIn } from '#shared/compute/quantities/seepage-volume.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { NetSummary } from '#shared/contract/drawings.ts';
 import type { Finding, NetReading, TitleBlockCell } from '#shared/contract/reading.ts';
 import { fixedText, plainText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+import { ownFlowUnit } from '../model/flow-unit.ts';
 import { figuresEntered, powerRuns } from './figure-runs.ts';
 import type { Run } from './runs.tsx';
 
@@ -31,6 +33,8 @@ export interface TitleFacts {
   /** True when the check is of an older state than the one shown. */
   checkedBefore?: boolean;
   calculation: string;
+  /** Unit in which the seepage is shown; the document's own without one. */
+  flowUnit?: FlowUnit | null;
 }
 
 type Told = Pick<TitleCell, 'label' | 'value'> & { state?: CellState | undefined };
@@ -70,7 +74,7 @@ export function titleBlockCells(
     ['channels', channelsOf(reading)],
     ['headPerDrop', headPerDropOf(document, reading)],
     ['permeability', permeabilityOf(document)],
-    ['seepage', seepageOf(document, reading)],
+    ['seepage', seepageOf(document, reading, facts.flowUnit ?? ownFlowUnit(document.unitSystem))],
     ['netCheck', netCheckOf(reading)],
   ];
   return [...head, ...told.map(([id, what]) => cell(id, what)), ...foot];
@@ -189,14 +193,15 @@ function permeabilityOf(document: FlowNetDocument): Told {
   return { label, value: [...powerRuns(held.k, figuresEntered(held.k)), ` ${held.unit}${factor}`] };
 }
 
-function seepageOf(document: FlowNetDocument, reading: NetReading | null): Told {
+function seepageOf(document: FlowNetDocument, reading: NetReading | null, unit: FlowUnit): Told {
   const si = document.unitSystem === 'SI';
   const label = si ? text.labels.seepagePerMetre : text.labels.seepagePerFoot;
   if (!reading) return { label, value: WAITING };
   const { seepage, seepageFigures, channels, channelsComplete, unequalIntervals } = reading.quantities;
   if (seepage !== null) {
     const only = channelsComplete ? '' : `, ${text.tracedChannelsOnly}`;
-    const value = [...powerRuns(seepage, seepageFigures), ` ${si ? 'm' : 'ft'}`, { sup: '3' }, `/s${only}`];
+    const shown = flowIn(unit, seepage, document.unitSystem);
+    const value = [...powerRuns(shown, seepageFigures), ...unitRuns(` ${unit}${only}`)];
     return { label, value, state: channelsComplete ? undefined : 'question' };
   }
   if (unequalIntervals) return { label, value: [text.unequal], state: 'question' };
@@ -209,6 +214,12 @@ function seepageOf(document: FlowNetDocument, reading: NetReading | null): Told 
 const SAID_BY_CHECK: readonly string[] = ['cellsNotSquare', 'anglesNotSquare', 'channelFlowsDiffer'];
 
 /** What stands in the way comes first; else how the net is drawn, and how many other questions there are. */
+/** A unit with its power raised as other powers are. */
+function unitRuns(words: string): Run[] {
+  const [before = '', after] = words.split('³');
+  return after === undefined ? [before] : [before, { sup: '3' }, after];
+}
+
 function netCheckOf(reading: NetReading | null): Told {
   const label = text.labels.netCheck;
   if (!reading) return { label, value: WAITING };

@@ -1,6 +1,7 @@
 import { useStore } from 'zustand';
 import { deskPaletteText as text } from '#client/text/desk-palette.ts';
 import { deskToolText } from '#client/text/desk-tools.ts';
+import { profileText } from '#client/text/profiles.ts';
 import { fixedText, plainText } from '#shared/text/number-text.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
@@ -25,6 +26,9 @@ function hintOf(state: DeskState): string {
   const drawn = state.draft === null ? undefined : state.document.entities[state.draft.lineId]?.value;
   if (drawn?.kind === 'line') {
     return `${text.tracing(deskToolText.lineKind(drawn.line), drawn.points.length)}\n${text.tracingKeys}`;
+  }
+  if (drawn?.kind === 'profile' && drawn.place.on === 'sheet') {
+    return `${text.tracing(profileText.drawn, drawn.place.points.length)}\n${text.tracingKeys}`;
   }
   return chosenLineHint(state) ?? text.hints[state.tool];
 }

@@ -23,5 +23,11 @@ const PICTURES: Partial<Record<PaletteTool, React.ReactNode>> = {
       <path d="M4 11l-2 3M9 11l-2 3M14 11l-2 3" />
     </g>
   ),
+  profile: (
+    <g className="stroke-point">
+      <path d="M1 4h14" strokeWidth="2" />
+      <path d="M2 4v4M6 4v8M10 4v6M14 4v3" />
+    </g>
+  ),
   readingPoint: <circle cx="8" cy="8" r="4" strokeWidth="2" className="stroke-point" />,
 };

@@ -11,7 +11,7 @@ import { ToolIcon } from './tool-icons.tsx';
 const GROUPS: ReadonlyArray<{ title: string; tools: readonly PaletteTool[] }> = [
   { title: text.setOut, tools: ['knownPoint', 'waterLevels'] },
   { title: text.trace, tools: ['equipotential', 'flowLine', 'phreaticLine', 'boundary'] },
-  { title: text.read, tools: ['readingPoint', 'note'] },
+  { title: text.read, tools: ['readingPoint', 'profile', 'note'] },
 ];
 
 type ToolPaletteProps = {

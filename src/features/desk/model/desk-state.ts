@@ -11,7 +11,7 @@ import type { Conflict } from './shared-edits.ts';
 import type { BoundaryKind, ToolId } from './tool-choice.ts';
 
 /** Kinds that can be hidden on the sheet. */
-export type HideableKind = LineKind | 'readingPoint' | 'knownPoint' | 'note';
+export type HideableKind = LineKind | 'readingPoint' | 'knownPoint' | 'profile' | 'note';
 
 /** The line under way: it is in the document already, unfinished. `atStart`: it grows at its first point. */
 export type Draft = { readonly lineId: string; readonly atStart: boolean };

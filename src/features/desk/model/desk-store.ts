@@ -151,7 +151,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
 function keptDraft(draft: Draft | null, document: FlowNetDocument): Draft | null {
   if (draft === null) return null;
   const value = document.entities[draft.lineId]?.value;
-  return value?.kind === 'line' && !value.finished ? draft : null;
+  return (value?.kind === 'line' || value?.kind === 'profile') && !value.finished ? draft : null;
 }
 
 /** True when the values of two documents differ, not only the versions beside them. */

@@ -2,7 +2,7 @@ import type { FlowNetDocument } from '#shared/contract/document.ts';
 
 /** What is chosen on the desk. `vertex`: index of the chosen vertex of a single chosen line. */
 export type Selection = {
-  readonly kind: 'line' | 'readingPoint' | 'knownPoint' | 'soil' | 'none';
+  readonly kind: 'line' | 'readingPoint' | 'knownPoint' | 'soil' | 'profile' | 'none';
   readonly ids: readonly string[];
   readonly vertex: number | null;
 };
@@ -10,7 +10,7 @@ export type Selection = {
 export const NO_SELECTION: Selection = { kind: 'none', ids: [], vertex: null };
 
 export function selectOne(
-  kind: 'line' | 'readingPoint' | 'knownPoint' | 'soil',
+  kind: Exclude<Selection['kind'], 'none'>,
   id: string,
   vertex: number | null = null,
 ): Selection {

@@ -9,6 +9,7 @@ export type ToolId =
   | 'phreaticLine'
   | 'boundary'
   | 'readingPoint'
+  | 'profile'
   | 'soilPlace'
   | 'note';
 

@@ -11,6 +11,7 @@ import type { SheetFrame } from '../model/viewport.ts';
 import { guideItems } from './guide-items.ts';
 import { COLOURS, lookOf, tracedLook, unfinishedLook } from './line-look.ts';
 import { placeWords } from './place-words.ts';
+import { profileItems } from './profile-items.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
 
 /** A note as the sheet shows it. */
@@ -53,6 +54,7 @@ export function buildScene(input: SceneInput): SceneItem[] {
   const items = [
     ...frameItem(input.frame),
     ...guides.under,
+    ...shown.flatMap((entity) => profileItem(entity, input)),
     ...lines,
     ...guides.over,
     ...labelItems(lines, input),
@@ -96,6 +98,12 @@ function lineItem({ id, value }: Shown, input: SceneInput): SceneLine[] {
   const drawn = value.finished || input.draftId === id;
   const look = drawn ? tracedLook(value.line, value.origin) : unfinishedLook(value.line);
   return [{ id, shape: 'line', points: value.points, look, strong: isChosen(id, input) }];
+}
+
+function profileItem({ id, value }: Shown, input: SceneInput): SceneItem[] {
+  if (value.kind !== 'profile') return [];
+  const { document, reading, map } = input;
+  return profileItems(id, value, { document, reading, map, chosen: isChosen(id, input) });
 }
 
 function mark(

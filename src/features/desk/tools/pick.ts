@@ -13,7 +13,8 @@ export type Mark = {
 export type Picked =
   | Mark
   | { readonly kind: 'note'; readonly id: string; readonly at: SheetPx }
-  | { readonly kind: 'line'; readonly id: string; readonly at: SheetPx; readonly segment: number };
+  | { readonly kind: 'line'; readonly id: string; readonly at: SheetPx; readonly segment: number }
+  | { readonly kind: 'profile'; readonly id: string; readonly at: SheetPx };
 
 /** Marks are drawn some pixels wide, so they are met a little farther out than lines. */
 const MARK_EXTRA_PX = 3;
@@ -63,7 +64,7 @@ export function markAt(context: ToolContext, at: SheetPx, kinds: readonly Mark['
   );
 }
 
-/** What is under the pointer: a note's balloon before a mark before a line; null for bare sheet. */
+/** What is under the pointer: a note's balloon before a mark before a line before a profile; null for bare sheet. */
 export function pickAt(context: ToolContext, at: SheetPx): Picked | null {
   const balloons = context.hiddenKinds.includes('note') ? [] : context.balloons;
   const balloon = nearest(balloons, at, reachOf(context, MARK_EXTRA_PX));
@@ -71,9 +72,23 @@ export function pickAt(context: ToolContext, at: SheetPx): Picked | null {
   const mark = markAt(context, at, ['readingPoint', 'knownPoint']);
   if (mark !== null) return mark;
   const hit = nearestOnLines(shownLines(context), at, reachOf(context));
-  return hit === null
+  if (hit !== null)
+    return { kind: 'line', id: hit.id, at: sheetPx(hit.at[0], hit.at[1]), segment: hit.segment };
+  const profile = nearestOnLines(shownProfiles(context), at, reachOf(context));
+  return profile === null
     ? null
-    : { kind: 'line', id: hit.id, at: sheetPx(hit.at[0], hit.at[1]), segment: hit.segment };
+    : { kind: 'profile', id: profile.id, at: sheetPx(profile.at[0], profile.at[1]) };
+}
+
+/** Profiles as lines on the sheet; a grid is none. */
+function shownProfiles(context: ToolContext): PickableLine[] {
+  if (context.hiddenKinds.includes('profile')) return [];
+  return entitiesOf(context.document, 'profile').flatMap(({ id, value: { place } }): PickableLine[] => {
+    if (place.on === 'sheet') return [{ id, points: place.points }];
+    const { map } = context;
+    if (place.on === 'grid' || map === null) return [];
+    return [{ id, points: place.points.map((point) => map.toSheet(sectionPt(...point))) }];
+  });
 }
 
 function nearest<T extends { readonly at: SheetPx }>(

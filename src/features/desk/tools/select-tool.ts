@@ -1,4 +1,5 @@
 import { deskToolText as text } from '#client/text/desk-tools.ts';
+import { profileText } from '#client/text/profiles.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
 import { segmentAt } from '#shared/compute/geometry/hit-test.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
@@ -61,6 +62,7 @@ function opened(picked: Exclude<Picked, { kind: 'note' }>): ToolCommand[] {
   const { id } = picked;
   const select: ToolCommand = { do: 'select', selection: selectOne(picked.kind, id) };
   if (picked.kind === 'line') return [select, { do: 'intent', intent: { type: 'openLine', id } }];
+  if (picked.kind === 'profile') return [select];
   const type = picked.kind === 'knownPoint' ? 'openKnownPoint' : 'openReadingPoint';
   return [select, { do: 'intent', intent: { type, id } }];
 }
@@ -111,11 +113,19 @@ function removeSelected(context: ToolContext): ToolStep {
 function removalLabel(context: ToolContext): string {
   const value = context.document.entities[context.selection.ids[0] ?? '']?.value;
   if (value?.kind === 'line') return text.removedLine(value);
+  if (value?.kind === 'profile') return profileText.labels.removed(value.name);
   return value?.kind === 'knownPoint' || value?.kind === 'readingPoint' ? text.removedMark(value.name) : '';
 }
 
-/** Goes on with the chosen line when it is unfinished. */
+/** Goes on with the chosen line or profile when it is unfinished. */
 function goOn(context: ToolContext): ToolStep {
+  const profileId = context.selection.kind === 'profile' ? context.selection.ids[0] : undefined;
+  if (profileId !== undefined && !context.readOnly) {
+    const value = context.document.entities[profileId]?.value;
+    if (value?.kind !== 'profile' || value.finished) return rest();
+    const draft = { lineId: profileId, atStart: false };
+    return rest({ do: 'tool', tool: 'profile', boundary: null }, { do: 'draft', draft });
+  }
   const chosen = chosenLine(context);
   if (chosen === null || chosen.line.finished || context.readOnly) return rest();
   const { tool, boundary } = toolForLine(chosen.line);

@@ -4,6 +4,7 @@ import type { ToolId } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import { growingEnd } from './line-points.ts';
 import { knownPointStep, noteStep, readingPointStep } from './place-tool.ts';
+import { nextProfilePlace, profileStep } from './profile-tool.ts';
 import { selectStep } from './select-tool.ts';
 import { snapAt } from './snap.ts';
 import { soilPlaceStep } from './soil-tool.ts';
@@ -20,6 +21,7 @@ const MACHINES: Record<ToolId, Machine> = {
   phreaticLine: traceStep,
   boundary: traceStep,
   readingPoint: readingPointStep,
+  profile: profileStep,
   soilPlace: soilPlaceStep,
   note: noteStep,
 };
@@ -40,6 +42,10 @@ export function overlayOf(
   if (state.at === 'dragging') {
     const lineId = state.target.kind === 'vertex' ? state.target.lineId : null;
     return { rubber: null, snap: lineId === null ? null : snapAt(context, at, keys, lineId), magnify };
+  }
+  if (context.tool === 'profile') {
+    const { from, to } = nextProfilePlace(at, keys, context);
+    return { rubber: from === null ? null : [from, to], snap: snapAt(context, at, keys, null), magnify };
   }
   if (context.choice === null) return { ...NO_OVERLAY, magnify };
   const line = draftLine(context);

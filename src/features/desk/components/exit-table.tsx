@@ -1,0 +1,62 @@
+import { exitsText } from '#client/text/exits.ts';
+import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import type { ExitReading } from '#shared/contract/reading-quantities.ts';
+import { fixedText } from '#shared/text/number-text.ts';
+import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+import { PlainTable } from './plain-table.tsx';
+
+const text = exitsText.exits;
+
+/** The cells at which water leaves, each with both its gradients; a factor only where it may be given. */
+export function ExitTable({
+  document,
+  exits,
+  onShow,
+}: {
+  document: FlowNetDocument;
+  exits: readonly ExitReading[];
+  onShow: (at: SheetPoint) => void;
+}) {
+  const { length, unitWeight } = unitNames(document.unitSystem);
+  const decimals = DECIMALS[document.unitSystem];
+  const columns = [
+    { head: text.exit },
+    { head: text.offset(length) },
+    { head: text.elevation(elevationUnit(document.unitSystem, document.datum)) },
+    { head: text.lost(length) },
+    { head: text.length(length) },
+    { head: text.average },
+    { head: text.point },
+    { head: text.critical },
+    { head: text.factor },
+    { head: text.pointFactor },
+    { head: text.force(unitWeight) },
+    { head: text.remark, words: true },
+  ];
+  const rows = exits.map((exit, i) => ({
+    key: `${exit.outlet} ${exit.before} ${exit.left}`,
+    cells: [
+      <button
+        key="show"
+        type="button"
+        className="touch underline"
+        aria-label={exitsText.showExit(i + 1)}
+        onClick={() => onShow(exit.at)}
+      >
+        {i + 1}
+      </button>,
+      fixedText(exit.offset, decimals.offset),
+      fixedText(exit.elevation, decimals.elevation),
+      fixedText(exit.headLost, decimals.head),
+      fixedText(exit.length, 2),
+      fixedText(exit.cellGradient, 2),
+      exit.pointState === 'singular' ? text.singular : fixedText(exit.pointGradient, 2),
+      fixedText(exit.criticalGradient, 2),
+      fixedText(exit.factor, 1),
+      fixedText(exit.pointFactor, 1),
+      fixedText(exit.seepageForce, 1),
+      exit.factorNote,
+    ],
+  }));
+  return <PlainTable caption={text.title} columns={columns} rows={rows} />;
+}

@@ -1,0 +1,85 @@
+import { useEffect, useState } from 'react';
+import { exitsText } from '#client/text/exits.ts';
+import { profileText } from '#client/text/profiles.ts';
+import { scheduleText } from '#client/text/schedule.ts';
+import type { DeskState, DeskStore } from '../model/desk-state.ts';
+import { ExitsPane } from './exits-pane.tsx';
+import type { MarginForm } from './margin-form.tsx';
+import { ProfilesPane } from './profiles-pane.tsx';
+import { SchedulePane } from './schedule-pane.tsx';
+
+type FiguresView = 'points' | 'profiles' | 'exits';
+const TITLES: Readonly<Record<FiguresView, string>> = {
+  points: scheduleText.title,
+  profiles: profileText.title,
+  exits: exitsText.title,
+};
+
+interface FiguresPaneProps {
+  store: DeskStore;
+  /** Name of the net, for the files that are made of its tables. */
+  netName: string;
+  /** Downloads the schedule as CSV. */
+  onDownload: () => void;
+  /** Opens a form in the margin; null where nothing may be added. */
+  onForm: ((form: MarginForm) => void) | null;
+  /** Shows the sheet, where it is not beside the table already. */
+  onSheet: () => void;
+}
+
+/** The tables below the sheet: reading points, profiles, exits; the one that goes with what is chosen comes forward. */
+export function FiguresPane({ store, netName, onDownload, onForm, onSheet }: FiguresPaneProps) {
+  const [shown, setShown] = useState<FiguresView>('points');
+  useEffect(
+    () =>
+      store.subscribe((state, before) => {
+        const asked = viewFor(state);
+        if (asked !== null && (asked !== viewFor(before) || state.tool !== before.tool)) setShown(asked);
+      }),
+    [store],
+  );
+  const views = <FigureViews shown={shown} onShow={setShown} />;
+  if (shown === 'profiles') {
+    return <ProfilesPane store={store} views={views} netName={netName} onForm={onForm} onSheet={onSheet} />;
+  }
+  if (shown === 'exits') return <ExitsPane store={store} views={views} />;
+  return (
+    <SchedulePane
+      store={store}
+      className="h-full"
+      views={views}
+      onDownload={onDownload}
+      onAdd={onForm === null ? null : () => onForm({ form: 'point' })}
+    />
+  );
+}
+
+/** The table that belongs to the tool in hand or to what is chosen; null when any may stay. */
+function viewFor({ tool, selection }: DeskState): FiguresView | null {
+  if (selection.kind === 'profile' || tool === 'profile') return 'profiles';
+  return selection.kind === 'readingPoint' || tool === 'readingPoint' ? 'points' : null;
+}
+
+/** The heading of the table shown, and beside it the names of the others. */
+function FigureViews({ shown, onShow }: { shown: FiguresView; onShow: (view: FiguresView) => void }) {
+  return (
+    <div className="flex flex-wrap items-baseline gap-x-3">
+      {(Object.keys(TITLES) as FiguresView[]).map((view) =>
+        view === shown ? (
+          <h2 key={view} className="m-0 text-base font-bold">
+            {TITLES[view]}
+          </h2>
+        ) : (
+          <button
+            key={view}
+            type="button"
+            className="touch text-base text-ink-2 underline decoration-rule underline-offset-4 hover:decoration-ink"
+            onClick={() => onShow(view)}
+          >
+            {TITLES[view]}
+          </button>
+        ),
+      )}
+    </div>
+  );
+}
