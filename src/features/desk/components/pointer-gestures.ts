@@ -1,6 +1,6 @@
 import { type ScreenPx, type SheetPx, screenPx } from '#shared/compute/frames.ts';
 import type { ViewStore } from '../model/view-store.ts';
-import { toSheet } from '../model/viewport.ts';
+import { sheetZoom, toSheet } from '../model/viewport.ts';
 import type { HostView, ToolHost } from '../tools/tool-host.ts';
 import type { Balloon, Modifiers } from '../tools/tool-types.ts';
 
@@ -46,7 +46,7 @@ export function attachGestures(target: GestureTarget): () => void {
   };
   const sheetAt = (at: ScreenPx) => toSheet(views.getState().view, at);
   const viewFor = (pointerType: string): HostView => ({
-    zoom: views.getState().view.zoom,
+    zoom: sheetZoom(views.getState().view),
     reachPx: pointerType === 'touch' ? REACH_TOUCH_PX : REACH_MOUSE_PX,
     balloons: target.balloons(),
   });

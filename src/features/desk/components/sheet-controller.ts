@@ -1,13 +1,15 @@
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
+import { IDENTITY, inverted, mapped } from '#shared/compute/linear-map.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
-import type { SheetFrame } from '../model/viewport.ts';
+import { type SheetFrame, sheetZoom, type Viewport } from '../model/viewport.ts';
 import { buildScene, type NoteBalloon, noteIdOf, partScene } from '../render/build-scene.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
 import type { SceneItem } from '../render/scene.ts';
+import { itemsThrough } from '../render/seen-through.ts';
 import { createSheetRenderer, type SheetRenderer } from '../render/sheet-renderer.ts';
 import { createToolHost, type HostView, type ToolHost } from '../tools/tool-host.ts';
 import type { Balloon, Modifiers } from '../tools/tool-types.ts';
@@ -50,9 +52,13 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let scene: readonly SceneItem[] = [];
   let active: readonly SceneItem[] = [];
 
-  const zoom = () => views.getState().view.zoom;
-  const balloons = (): Balloon[] => balloonsOf(scene, zoom());
-  const keyView = (): HostView => ({ zoom: zoom(), reachPx: KEYBOARD_REACH_PX, balloons: balloons() });
+  const view = () => views.getState().view;
+  const balloons = (): Balloon[] => balloonsOf(scene, view());
+  const keyView = (): HostView => ({
+    zoom: sheetZoom(view()),
+    reachPx: KEYBOARD_REACH_PX,
+    balloons: balloons(),
+  });
 
   function showScene(): void {
     sceneDue = false;
@@ -68,7 +74,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       guides: state.guides,
       map: host.map(),
       readOnly: state.readOnly,
-      zoom: zoom(),
+      zoom: view().zoom,
+      seenAs: view().seenAs ?? null,
       frame: options.frame,
     });
     const parts = partScene(scene);
@@ -89,9 +96,9 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     overlay =
       pointer === null
         ? NO_OVERLAY
-        : host.overlay(pointer.at, pointer.keys, { ...pointer.view, zoom: zoom() });
+        : host.overlay(pointer.at, pointer.keys, { ...pointer.view, zoom: sheetZoom(view()) });
     const underPointer = overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null);
-    renderer.showActive([...active, ...underPointer]);
+    renderer.showActive([...active, ...itemsThrough(underPointer, view().seenAs ?? null)]);
     options.onFollow(overlay.magnify && pointer !== null ? (overlay.snap?.at ?? pointer.at) : null);
   }
 
@@ -125,7 +132,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     store.onLookAt((at) => views.lookAt(sheetPx(...at))),
     views.subscribe((state, before) => {
       renderer.setView(state.view);
-      if (state.view.zoom !== before.view.zoom) dueScene();
+      const { zoom, seenAs } = state.view;
+      if (zoom !== before.view.zoom || seenAs !== before.view.seenAs) dueScene();
     }),
   ];
   element.ownerDocument.addEventListener('keydown', key);
@@ -149,11 +157,14 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
 }
 
 /** Where the notes' balloons stand in a scene, to be met there by the pointer. */
-function balloonsOf(scene: readonly SceneItem[], zoom: number): Balloon[] {
+function balloonsOf(scene: readonly SceneItem[], { zoom, seenAs }: Viewport): Balloon[] {
+  const back = seenAs === undefined ? IDENTITY : inverted(seenAs);
   return scene.flatMap((item) => {
     if (item.shape !== 'balloon') return [];
     const [dx, dy] = item.offsetPx;
-    return [{ id: noteIdOf(item.id), at: sheetPx(item.at[0] + dx / zoom, item.at[1] + dy / zoom) }];
+    return [
+      { id: noteIdOf(item.id), at: sheetPx(...mapped(back, item.at[0] + dx / zoom, item.at[1] + dy / zoom)) },
+    ];
   });
 }
 

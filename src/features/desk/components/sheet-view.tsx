@@ -12,6 +12,7 @@ import type { NoteBalloon } from '../render/build-scene.ts';
 import { DraftActions } from './draft-actions.tsx';
 import { Magnifier } from './magnifier.tsx';
 import { PointerReadout } from './pointer-readout.tsx';
+import { SectionViewSwitch } from './section-view-switch.tsx';
 import { createSheetController, type SheetController } from './sheet-controller.ts';
 import { ZoomBar } from './zoom-bar.tsx';
 
@@ -88,7 +89,8 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       </span>
       <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 [&>*]:pointer-events-auto">
         <PointerReadout store={store} />
-        <div className="ml-auto">
+        <div className="ml-auto flex flex-wrap items-start justify-end gap-2">
+          <SectionViewSwitch store={store} views={views} />
           <ZoomBar views={views} />
         </div>
       </div>

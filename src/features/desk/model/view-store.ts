@@ -1,5 +1,6 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import { type ScreenPx, type SheetPx, screenPx, sheetPx } from '#shared/compute/frames.ts';
+import type { LinearMap } from '#shared/compute/linear-map.ts';
 import {
   centredOn,
   fitFrame,
@@ -9,6 +10,7 @@ import {
   resized,
   type SheetFrame,
   type SheetSize,
+  seenThrough,
   type Viewport,
   zoomAbout,
 } from './viewport.ts';
@@ -21,6 +23,8 @@ export type ViewActions = {
   zoom(factor: number, at?: ScreenPx): void;
   fit(): void;
   lookAt(at: SheetPx): void;
+  /** Shows the sheet through a linear map, or as it is drawn. */
+  seeAs(map: LinearMap | null): void;
 };
 export type ViewStore = StoreApi<ViewState> & ViewActions;
 
@@ -54,6 +58,13 @@ export function createViewStore(sheet: SheetSize, frame: SheetFrame | null): Vie
     zoom(factor, at) {
       const view = now();
       set(zoomAbout(view, at ?? screenPx(view.widthPx / 2, view.heightPx / 2), factor, sheet));
+    },
+    seeAs(map) {
+      const view = now();
+      if ((view.seenAs ?? null) === map) return;
+      set(
+        view.widthPx === 0 ? seenThrough(view, map, sheet) : fitFrame(seenThrough(view, map, sheet), whole),
+      );
     },
     fit: () => set(fitFrame(now(), whole)),
     lookAt(at) {

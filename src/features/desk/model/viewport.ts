@@ -1,11 +1,18 @@
 import { type ScreenPx, type SheetPx, screenPx, sheetPx } from '#shared/compute/frames.ts';
+import { determinantOf, inverted, type LinearMap, mapped } from '#shared/compute/linear-map.ts';
 
-/** The window through which the sheet is seen. Screen pixels are CSS pixels; the sheet is never turned. */
+/**
+ * The window through which the sheet is seen. Screen pixels are CSS pixels. The sheet may be seen through a linear map,
+ * as the natural or the transformed section: what the map makes of the sheet is the picture, and places on the sheet
+ * are mapped back from it, so that tracing goes on as before.
+ */
 export type Viewport = {
-  /** Screen pixels per sheet pixel. */
+  /** Screen pixels per pixel of the picture. */
   readonly zoom: number;
-  /** Place on the sheet seen at the view's top-left corner. */
+  /** Place of the picture seen at the view's top-left corner; the picture is the sheet where there is no map. */
   readonly origin: SheetPx;
+  /** Sheet pixels to pixels of the picture; without one the sheet is seen as it is drawn. */
+  readonly seenAs?: LinearMap;
   readonly widthPx: number;
   readonly heightPx: number;
 };
@@ -24,27 +31,64 @@ const FIT_MARGIN_PX = 16;
 const IN_SIGHT_PX = 60;
 
 export function toScreen(view: Viewport, at: SheetPx): ScreenPx {
-  return screenPx((at[0] - view.origin[0]) * view.zoom, (at[1] - view.origin[1]) * view.zoom);
+  const [x, y] = view.seenAs === undefined ? at : mapped(view.seenAs, at[0], at[1]);
+  return screenPx((x - view.origin[0]) * view.zoom, (y - view.origin[1]) * view.zoom);
 }
 
 export function toSheet(view: Viewport, at: ScreenPx): SheetPx {
-  return sheetPx(at[0] / view.zoom + view.origin[0], at[1] / view.zoom + view.origin[1]);
+  const x = at[0] / view.zoom + view.origin[0];
+  const y = at[1] / view.zoom + view.origin[1];
+  return view.seenAs === undefined ? sheetPx(x, y) : sheetPx(...mapped(inverted(view.seenAs), x, y));
 }
 
-/** The part of the sheet's plane that is seen, `[left, top, width, height]`. */
+/** The part of the sheet's plane that is seen, `[left, top, width, height]`: about all of it through a slanting map. */
 export function seenFrame(view: Viewport): SheetFrame {
-  return [view.origin[0], view.origin[1], view.widthPx / view.zoom, view.heightPx / view.zoom];
+  const seen: SheetFrame = [
+    view.origin[0],
+    view.origin[1],
+    view.widthPx / view.zoom,
+    view.heightPx / view.zoom,
+  ];
+  return view.seenAs === undefined ? seen : frameThrough(inverted(view.seenAs), seen);
+}
+
+/** The upright frame about what a map makes of a frame. */
+function frameThrough(map: LinearMap | undefined, frame: SheetFrame): SheetFrame {
+  if (map === undefined) return frame;
+  const [left, top, width, height] = frame;
+  const corners = [
+    mapped(map, left, top),
+    mapped(map, left + width, top),
+    mapped(map, left, top + height),
+    mapped(map, left + width, top + height),
+  ];
+  const xs = corners.map(([x]) => x);
+  const ys = corners.map(([, y]) => y);
+  const [x, y] = [Math.min(...xs), Math.min(...ys)];
+  return [x, y, Math.max(...xs) - x, Math.max(...ys) - y];
+}
+
+/** Screen pixels per sheet pixel, the geometric mean where they differ with the direction. */
+export function sheetZoom({ zoom, seenAs }: Pick<Viewport, 'zoom' | 'seenAs'>): number {
+  return seenAs === undefined ? zoom : zoom * Math.sqrt(Math.abs(determinantOf(seenAs)));
+}
+
+/** The same place in the middle, through another map or none. */
+export function seenThrough(view: Viewport, seenAs: LinearMap | null, sheet: SheetSize): Viewport {
+  const { seenAs: _, ...window } = view;
+  const middle = toSheet(view, screenPx(view.widthPx / 2, view.heightPx / 2));
+  return keptInSight(centredOn(seenAs === null ? window : { ...window, seenAs }, middle), sheet);
 }
 
 /** A view in which a frame of the sheet is seen whole and centred. */
 export function fitFrame(view: Viewport, frame: SheetFrame): Viewport {
-  const [left, top, width, height] = frame;
+  const [left, top, width, height] = frameThrough(view.seenAs, frame);
   const margin = Math.min(FIT_MARGIN_PX, view.widthPx / 10, view.heightPx / 10);
   const zoom = heldZoom(
     Math.min((view.widthPx - 2 * margin) / width, (view.heightPx - 2 * margin) / height),
     0,
   );
-  return centredOn({ ...view, zoom }, sheetPx(left + width / 2, top + height / 2));
+  return centredOnPicture({ ...view, zoom }, left + width / 2, top + height / 2);
 }
 
 export function fitSheet(view: Viewport, sheet: SheetSize): Viewport {
@@ -53,7 +97,12 @@ export function fitSheet(view: Viewport, sheet: SheetSize): Viewport {
 
 /** The view moved so that a place of the sheet is seen in its middle. */
 export function centredOn(view: Viewport, at: SheetPx): Viewport {
-  const origin = sheetPx(at[0] - view.widthPx / 2 / view.zoom, at[1] - view.heightPx / 2 / view.zoom);
+  const [x, y] = view.seenAs === undefined ? at : mapped(view.seenAs, at[0], at[1]);
+  return centredOnPicture(view, x, y);
+}
+
+function centredOnPicture(view: Viewport, x: number, y: number): Viewport {
+  const origin = sheetPx(x - view.widthPx / 2 / view.zoom, y - view.heightPx / 2 / view.zoom);
   return { ...view, origin };
 }
 
@@ -61,8 +110,10 @@ export function centredOn(view: Viewport, at: SheetPx): Viewport {
 export function zoomAbout(view: Viewport, at: ScreenPx, factor: number, sheet: SheetSize): Viewport {
   const smallest = fitSheet(view, sheet).zoom * SMALLEST_OF_FIT;
   const zoom = heldZoom(view.zoom * factor, smallest);
-  const under = toSheet(view, at);
-  const origin = sheetPx(under[0] - at[0] / zoom, under[1] - at[1] / zoom);
+  const origin = sheetPx(
+    view.origin[0] + at[0] / view.zoom - at[0] / zoom,
+    view.origin[1] + at[1] / view.zoom - at[1] / zoom,
+  );
   return keptInSight({ ...view, zoom, origin }, sheet);
 }
 
@@ -80,8 +131,10 @@ export function resized(view: Viewport, widthPx: number, heightPx: number, sheet
 
 /** The view with a part of the sheet held in sight, so that it cannot be lost. */
 export function keptInSight(view: Viewport, sheet: SheetSize): Viewport {
-  const x = heldAxis(view.origin[0], view.widthPx / view.zoom, sheet.widthPx, IN_SIGHT_PX / view.zoom);
-  const y = heldAxis(view.origin[1], view.heightPx / view.zoom, sheet.heightPx, IN_SIGHT_PX / view.zoom);
+  const [left, top, width, height] = frameThrough(view.seenAs, [0, 0, sheet.widthPx, sheet.heightPx]);
+  const least = IN_SIGHT_PX / view.zoom;
+  const x = left + heldAxis(view.origin[0] - left, view.widthPx / view.zoom, width, least);
+  const y = top + heldAxis(view.origin[1] - top, view.heightPx / view.zoom, height, least);
   return x === view.origin[0] && y === view.origin[1] ? view : { ...view, origin: sheetPx(x, y) };
 }
 
@@ -95,7 +148,7 @@ function heldZoom(zoom: number, smallest: number): number {
 }
 
 /**
- * The view moved by less than a device pixel so that the sheet begins on a whole one: the tiles lie on whole pixels,
+ * The view moved by less than a device pixel so that the picture begins on a whole one: the tiles lie on whole pixels,
  * and what is drawn and clicked must lie where they do.
  */
 export function onWholePixels(view: Viewport, devicePixelRatio: number): Viewport {

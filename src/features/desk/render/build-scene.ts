@@ -1,5 +1,6 @@
 import { soilText } from '#client/text/desk-forms.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
+import type { LinearMap } from '#shared/compute/linear-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { DocumentEntity, FlowNetDocument, SheetPoint, TracedLine } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
@@ -13,6 +14,7 @@ import { COLOURS, lookOf, tracedLook, unfinishedLook } from './line-look.ts';
 import { placeWords } from './place-words.ts';
 import { profileItems } from './profile-items.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
+import { itemsThrough } from './seen-through.ts';
 
 /** A note as the sheet shows it. */
 export type NoteBalloon = {
@@ -36,6 +38,8 @@ export type SceneInput = {
   readonly map: SectionMap | null;
   readonly readOnly: boolean;
   readonly zoom: number;
+  /** Sheet pixels to pixels of the picture, as through which the sheet is seen; null = as it is drawn. */
+  readonly seenAs: LinearMap | null;
   /** The section's part of the sheet, outlined when the sheet holds more; null = the whole sheet. */
   readonly frame: SheetFrame | null;
 };
@@ -63,7 +67,7 @@ export function buildScene(input: SceneInput): SceneItem[] {
     ...doubtItems(input),
     ...noteItems(input),
   ];
-  return placeWords(items, input.zoom);
+  return placeWords(itemsThrough(items, input.seenAs), input.zoom);
 }
 
 function frameItem(frame: SheetFrame | null): SceneLine[] {

@@ -1,3 +1,4 @@
+import { IDENTITY } from '#shared/compute/linear-map.ts';
 import type { SheetFrame, Viewport } from '../model/viewport.ts';
 import { seenFrame } from '../model/viewport.ts';
 import type { LoadedTile } from './load-tile.ts';
@@ -39,6 +40,7 @@ export function createTileLayer(
   clip.setAttribute('aria-hidden', 'true');
   Object.assign(clip.style, { position: 'absolute', inset: '0', overflow: 'hidden', contain: 'strict' });
   Object.assign(paper.style, { position: 'absolute', left: '0', top: '0', willChange: 'transform' });
+  paper.style.transformOrigin = '0 0';
   paper.style.background = EMPTY_SHEET_COLOUR;
   clip.append(paper);
   host.append(clip);
@@ -71,7 +73,9 @@ export function createTileLayer(
       view = next;
       const x = Math.round(-next.origin[0] * next.zoom * devicePixelRatioNow()) / devicePixelRatioNow();
       const y = Math.round(-next.origin[1] * next.zoom * devicePixelRatioNow()) / devicePixelRatioNow();
-      paper.style.transform = `translate(${x}px, ${y}px)`;
+      const [a, b, c, d] = next.seenAs ?? IDENTITY;
+      // CSS writes a matrix column by column.
+      paper.style.transform = `matrix(${a}, ${c}, ${b}, ${d}, ${x}, ${y})`;
       const key = layoutKey(sheet, next);
       if (key === laidOut) return false;
       laidOut = key;

@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   fitFrame,
@@ -6,12 +7,14 @@ import {
   panBy,
   resized,
   seenFrame,
+  seenThrough,
   toScreen,
   toSheet,
   type Viewport,
   zoomAbout,
 } from '#client/features/desk/model/viewport.ts';
 import { screenPx, sheetPx } from '#shared/compute/frames.ts';
+import type { LinearMap } from '#shared/compute/linear-map.ts';
 
 const sheet = { widthPx: 10_000, heightPx: 7_000 };
 const view: Viewport = { zoom: 0.5, origin: sheetPx(1000, 500), widthPx: 1200, heightPx: 800 };
@@ -70,5 +73,73 @@ describe('the viewport', () => {
     const after = toSheet(wider, screenPx(800, 350));
     expect(after[0]).toBeCloseTo(before[0], 9);
     expect(after[1]).toBeCloseTo(before[1], 9);
+  });
+});
+
+describe('a sheet seen through a map', () => {
+  const map = fc
+    .tuple(
+      fc.double({ min: 0.05, max: 1, noNaN: true }),
+      fc.double({ min: 0.05, max: 1, noNaN: true }),
+      fc.double({ min: -Math.PI, max: Math.PI, noNaN: true }),
+    )
+    .map(([along, across, turn]): LinearMap => {
+      const [c, s] = [Math.cos(turn), Math.sin(turn)];
+      // Shortened by `along` in a direction and by `across` square to it, so that it is never flat.
+      return [
+        along * c * c + across * s * s,
+        (along - across) * c * s,
+        (along - across) * c * s,
+        along * s * s + across * c * c,
+      ];
+    });
+
+  it('maps every place on screen back to the sheet, keeps it while zooming, and shows a fitted frame whole', () => {
+    fc.assert(
+      fc.property(map, fc.tuple(fc.nat(1200), fc.nat(800)), (seenAs, [x, y]) => {
+        const seen = fitFrame({ ...view, seenAs }, [2000, 1000, 4000, 1000]);
+        for (const corner of [
+          [2000, 1000],
+          [6000, 1000],
+          [2000, 2000],
+          [6000, 2000],
+        ] as const) {
+          const [cx, cy] = toScreen(seen, sheetPx(...corner));
+          expect(Math.min(cx, cy, view.widthPx - cx, view.heightPx - cy)).toBeGreaterThan(0);
+        }
+        const pointer = screenPx(x, y);
+        const at = toSheet(seen, pointer);
+        expect(Math.hypot(toScreen(seen, at)[0] - x, toScreen(seen, at)[1] - y)).toBeLessThan(1e-6);
+        // About the middle, so that nothing has to be held in sight.
+        const middle = screenPx(600, 400);
+        const [before, after] = [seen, zoomAbout(seen, middle, 1.7, sheet)].map((each) =>
+          toSheet(each, middle),
+        );
+        expect(Math.hypot(after![0] - before![0], after![1] - before![1])).toBeLessThan(1e-6);
+        const [left, top, width, height] = seenFrame(seen);
+        expect(at[0]).toBeGreaterThan(left - 1e-6);
+        expect(at[0]).toBeLessThan(left + width + 1e-6);
+        expect(at[1]).toBeGreaterThan(top - 1e-6);
+        expect(at[1]).toBeLessThan(top + height + 1e-6);
+      }),
+    );
+  });
+
+  it('has the same place in its middle as before, and is the drawing again without the map', () => {
+    const middle = screenPx(600, 400);
+    const through = seenThrough(view, [1 / 3, 0, 0, 1], sheet);
+    expect(toSheet(through, middle)[0]).toBeCloseTo(toSheet(view, middle)[0], 6);
+    expect(seenThrough(through, null, sheet)).toEqual(view);
+  });
+
+  it('cannot be lost however far it is dragged', () => {
+    const seen = panBy(seenThrough(view, [1 / 3, 0, 0, 1], sheet), 1e6, -1e6, sheet);
+    const [left, top, width, height] = seenFrame(seen);
+    expect([left < sheet.widthPx, left + width > 0, top < sheet.heightPx, top + height > 0]).toEqual([
+      true,
+      true,
+      true,
+      true,
+    ]);
   });
 });

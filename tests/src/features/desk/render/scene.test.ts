@@ -35,6 +35,7 @@ function inputOf(changes: Partial<SceneInput> = {}): SceneInput {
     map: null,
     readOnly: false,
     zoom: 1,
+    seenAs: null,
     frame: null,
     ...changes,
   };
