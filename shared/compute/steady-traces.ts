@@ -1,8 +1,11 @@
+import { areAt } from '#shared/compute/geometry/polyline.ts';
 import { withoutTremor } from '#shared/compute/geometry/tremor.ts';
-import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
+import type { DocumentEntity, FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 
-/** Kept as long as the line's value is: a line that was not touched is not worked out again. */
-const kept = new WeakMap<DocumentEntity, { readonly accuracyPx: number; readonly steady: DocumentEntity }>();
+type Kept = { readonly from: Float64Array; readonly accuracyPx: number; readonly steady: SheetPoint[] };
+
+/** Kept as long as the points of the line are: a line that was not touched is not worked out again. */
+const kept = new WeakMap<readonly SheetPoint[], Kept>();
 
 /**
  * The document with its traced lines free of the hand's tremor, see `withoutTremor`: what is read and judged is the
@@ -17,11 +20,16 @@ export function steadyTraces(document: FlowNetDocument, accuracyPx: number): Flo
 
 function steadied(value: DocumentEntity, accuracyPx: number): DocumentEntity {
   if (value.kind !== 'line') return value;
-  const known = kept.get(value);
-  if (known?.accuracyPx === accuracyPx) return known.steady;
-  const points = withoutTremor(value.points, accuracyPx);
-  const steady: DocumentEntity =
-    points === value.points ? value : { ...value, points: points.map(([x, y]) => [x, y]) };
-  kept.set(value, { accuracyPx, steady });
+  const points = steadyPoints(value.points, accuracyPx);
+  return points === value.points ? value : { ...value, points };
+}
+
+function steadyPoints(points: SheetPoint[], accuracyPx: number): SheetPoint[] {
+  const known = kept.get(points);
+  // Whoever changes a vertex in place must not be given the line of before.
+  if (known?.accuracyPx === accuracyPx && areAt(points, known.from)) return known.steady;
+  const smooth = withoutTremor(points, accuracyPx);
+  const steady = smooth === points ? points : smooth.map(([x, y]): SheetPoint => [x, y]);
+  kept.set(points, { from: Float64Array.from(points.flat()), accuracyPx, steady });
   return steady;
 }

@@ -199,3 +199,12 @@ export function boxesMeet(a: Box, b: Box, margin = 0): boolean {
     b.minY <= a.maxY + margin
   );
 }
+
+/** True when points are at flat coordinates x0 y0 x1 y1 …, to the last bit. */
+export function areAt(points: readonly Pair[], xy: Float64Array): boolean {
+  if (2 * points.length !== xy.length) return false;
+  for (let i = 0; i < points.length; i += 1) {
+    if (points[i]![0] !== xy[2 * i] || points[i]![1] !== xy[2 * i + 1]) return false;
+  }
+  return true;
+}

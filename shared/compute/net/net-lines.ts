@@ -1,4 +1,4 @@
-import { lengthOf, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
+import { areAt, lengthOf, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
 import {
   entitiesOf,
   type FlowNetDocument,
@@ -6,14 +6,15 @@ import {
   type TracedLine,
 } from '#shared/contract/document.ts';
 
-/** Shapes are kept as long as the lines are: a line that was not touched is not measured again. */
-const shapes = new WeakMap<TracedLine, Polyline | null>();
+/** Shapes are kept as long as the points are: a line that was not touched is not measured again. */
+const shapes = new WeakMap<TracedLine['points'], Polyline>();
 
-function shapeOf(value: TracedLine): Polyline | null {
-  const known = shapes.get(value);
-  if (known !== undefined) return known;
-  const shape = polylineOf(value.points);
-  shapes.set(value, shape);
+function shapeOf({ points }: TracedLine): Polyline | null {
+  const known = shapes.get(points);
+  // Whoever changes a vertex in place must not be given the shape of before.
+  if (known !== undefined && areAt(points, known.xy)) return known;
+  const shape = polylineOf(points);
+  if (shape !== null) shapes.set(points, shape);
   return shape;
 }
 

@@ -32,7 +32,7 @@ function changed(document: FlowNetDocument, { entity, vertex, dx, dy }: Change):
   else if (value.kind === 'netCount') value.tracingAccuracyPx = 1 + Math.abs(dx) / 4;
   else if (value.kind === 'readingPoint' && value.place.on === 'sheet') {
     value.place.at = [value.place.at[0] + dx, value.place.at[1] + dy];
-  } else if (value.kind === 'knownPoint') value.offset += dx / 1000;
+  } else if (value.kind === 'knownPoint' && value.offset !== null) value.offset += dx / 1000;
   return copy;
 }
 
@@ -62,10 +62,29 @@ describe('a reader that remembers', () => {
     for (const dx of [0, 0.4, -0.8, 0.4]) {
       const document = structuredClone(net);
       for (const { value } of Object.values(document.entities)) {
-        if (value.kind === 'knownPoint') value.elevation += dx;
+        if (value.kind === 'knownPoint' && value.elevation !== null) value.elevation += dx;
       }
       expect(reader.read(document)).toEqual(readNet(structuredClone(document)));
     }
+  });
+
+  it('takes no change for the line of before, made in place or not', () => {
+    const { net, pxPerUnit } = EXACT_NETS[0]!;
+    const document = exactNetDocument(net, {
+      pxPerUnit,
+      readings: randomReadings(net, 20, 4),
+      jitterPx: 1.5,
+    });
+    const reader = createNetReader();
+    reader.read(document);
+    readNet(document);
+    for (const { value } of Object.values(document.entities)) {
+      if (value.kind !== 'line' || value.line !== 'equipotential') continue;
+      for (const point of value.points) point[0] += 2;
+    }
+    const fresh = readNet(structuredClone(document));
+    expect(readNet(document)).toEqual(fresh);
+    expect(reader.read(document)).toEqual(fresh);
   });
 
   it('answers documents of any kind as they come', () => {
