@@ -17,10 +17,13 @@ export const profileSample = z.object({
   reason: z.nullable(z.object({ code: z.string(), text: z.string() })),
   /** What is doubtful about the figure; null when nothing is. */
   doubtful: z.nullable(z.object({ code: z.string(), text: z.string() })),
+  /** All ± hold 95 %. */
   totalHead: figure,
+  totalHeadPlusMinus: figure,
   pressureHead: figure,
   /** u = γw(h − z); 0 above the phreatic line (suction left out). */
   porePressure: figure,
+  porePressurePlusMinus: figure,
   /** u over the weight of the soil vertically above; null without a ground line above it or a unit weight. */
   ru: figure,
 });
@@ -32,6 +35,8 @@ const resultant = z.object({
   horizontal: z.number(),
   vertical: z.number(),
   size: z.number(),
+  /** Of the size, along the resultant. */
+  plusMinus: figure,
   /** Where the line of action meets the straight line through the ends of the base, and how far from its first end. */
   actsAt: z.nullable(sectionPlace),
   arm: figure,
@@ -74,6 +79,7 @@ export const exitReading = z.object({
   elevation: z.number(),
   /** Cell average Δh/ℓ. */
   cellGradient: figure,
+  cellGradientPlusMinus: figure,
   length: z.number(),
   headLost: figure,
   /** Gradient at the place itself, by the field; null where it has no bound and where it could not be worked out. */
@@ -105,6 +111,7 @@ export const heaveReading = z.object({
   depth: z.number(),
   width: z.number(),
   meanExcessHead: figure,
+  meanExcessHeadPlusMinus: figure,
   factor: figure,
   /** Why there is no factor; empty when there is one. */
   note: z.string(),

@@ -97,6 +97,11 @@ function onFreeFace(reading: DoubtfulReading, net: NetDoubt): ReadingDoubt {
   return { totalHead: [...place.elevation, ...datum], pressureHead: [], porePressure: [] };
 }
 
+/** Contributions to the head at the outlet. */
+export function outletDoubt(net: NetDoubt): Contributions {
+  return endHead(net.outlet, net);
+}
+
 /** Contributions to the head lost from the headwater to the outlet. */
 export function headLostDoubt(net: NetDoubt): Contributions {
   return weightedSum([

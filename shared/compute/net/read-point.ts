@@ -1,4 +1,5 @@
-import { plusMinusOf, readingDoubt } from '#shared/compute/doubt/point-doubt.ts';
+import { doubtAtPlace } from '#shared/compute/doubt/doubt-at-place.ts';
+import { plusMinusOf } from '#shared/compute/doubt/point-doubt.ts';
 import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
 import { type LieOfPlace, lieOf } from '#shared/compute/net/lie-of-place.ts';
 import { questionReading } from '#shared/compute/net/point-findings.ts';
@@ -137,23 +138,21 @@ function withFigures(read: TwiceRead, ground: ReadingGround): PointReading {
 /** Without a field the gradient is only known in its size, by hand's rule. */
 function doubtOf(read: TwiceRead, totalHead: number, pressureHead: number, ground: ReadingGround) {
   const { point, sheetAt, lie, hand, field } = read;
-  const { headwater, outHead } = ground.heads;
-  const lost = (headwater ?? 0) - (outHead ?? 0);
   const length = (hand.way.toBefore + hand.way.toAfter) * ground.map.unitsPerPx;
   const slope = length > 0 ? Math.abs(hand.headAfter - hand.headBefore) / length : 0;
-  const doubt = readingDoubt(
+  const doubt = doubtAtPlace(
     {
       id: point.id,
-      at: sheetPx(...ground.toSheet(sheetAt)),
+      at: sheetAt,
+      lie,
       typed: point.value.place.on === 'section',
-      onFreeFace: lie.onFreeFace,
       elevationPlusMinus: point.value.elevationPlusMinus,
-      partLost: lost > 0 ? ((headwater ?? 0) - totalHead) / lost : 0,
+      fraction: hand.way.fraction,
       gradient: field?.gradient ?? [slope, 0],
-      between: { before: lie.before.id, after: lie.after.id, fraction: hand.way.fraction },
+      totalHead,
       pressureHead,
     },
-    ground.doubt,
+    ground,
   );
   return plusMinusOf(doubt);
 }

@@ -1,3 +1,5 @@
+import { doubtAtPlace } from '#shared/compute/doubt/doubt-at-place.ts';
+import type { ReadingDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import type { SheetPx } from '#shared/compute/frames.ts';
 import { straddlesWall } from '#shared/compute/net/hand-rule.ts';
 import { type LieOfPlace, lieOf } from '#shared/compute/net/lie-of-place.ts';
@@ -15,9 +17,13 @@ export type PlaceHead =
       /** (∂h/∂offset, ∂h/∂elevation); null where the field could not be solved. */
       readonly gradient: readonly [number, number] | null;
       readonly doubtful: Said | null;
+      readonly doubt: ReadingDoubt;
     }
   | { readonly status: 'abovePhreatic' }
   | ({ readonly status: 'withheld' } & Said);
+
+/** Whose place it is: places of one tracing share its errors. `typed`: given in section coordinates. */
+export type PlaceOrigin = { readonly id: string; readonly typed: boolean };
 
 /** Reads the head at any place in working pixels. */
 export type HeadAtPlace = (at: SheetPx) => PlaceHead;
@@ -35,7 +41,7 @@ const BY_HAND: Said = {
  * The head at a place in working pixels by the same rules as at a reading point: by the field between the lines, by
  * hand's rule where the field could not be solved, nothing above the phreatic line, outside the net or inside a body.
  */
-export function headAtPlace(at: SheetPx, ground: ReadingGround): PlaceHead {
+export function headAtPlace(at: SheetPx, ground: ReadingGround, origin: PlaceOrigin): PlaceHead {
   const lie = lieOf(at, ground);
   if (lie.in === 'air') return { status: 'abovePhreatic' };
   if (lie.in === 'nothing') return { status: 'withheld', code: lie.code, text: lie.text };
@@ -50,7 +56,26 @@ export function headAtPlace(at: SheetPx, ground: ReadingGround): PlaceHead {
     totalHead: found.totalHead,
     gradient: field !== null && 'gradient' in field ? finitePair(field.gradient) : null,
     doubtful: doubtAt(at, lie, ground, field === null),
+    doubt: doubtAtPlace(
+      {
+        ...origin,
+        at,
+        lie,
+        elevationPlusMinus: null,
+        fraction: fractionOf(found.totalHead, lie),
+        gradient: field !== null && 'gradient' in field ? field.gradient : [0, 0],
+        totalHead: found.totalHead,
+        pressureHead: found.totalHead - ground.map.toSection(at)[1],
+      },
+      ground,
+    ),
   };
+}
+
+/** Part of the interval passed, by the heads; the middle beside a line along which the head varies. */
+function fractionOf(head: number, { before, after }: Extract<LieOfPlace, { in: 'strip' }>): number {
+  if (before.head === null || after.head === null || before.head === after.head) return 0.5;
+  return Math.min(1, Math.max(0, (before.head - head) / (before.head - after.head)));
 }
 
 function doubtAt(

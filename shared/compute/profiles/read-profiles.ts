@@ -1,10 +1,11 @@
+import { halfWidth } from '#shared/compute/doubt/contributions.ts';
 import { type SectionPt, sheetPx } from '#shared/compute/frames.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
 import type { PreparedNet } from '#shared/compute/prepare-net.ts';
 import { overburdenAt } from '#shared/compute/profiles/overburden.ts';
-import { headAtPlace, type PlaceHead } from '#shared/compute/profiles/place-head.ts';
+import { headAtPlace, type PlaceHead, type PlaceOrigin } from '#shared/compute/profiles/place-head.ts';
 import { type ProfilePlace, type ProfilePlaces, placesOf } from '#shared/compute/profiles/profile-places.ts';
-import { upliftOn } from '#shared/compute/profiles/uplift-on-base.ts';
+import { type ReadSample, upliftOn } from '#shared/compute/profiles/uplift-on-base.ts';
 import { pressureRatio } from '#shared/compute/quantities/gradients.ts';
 import type { SoilGround } from '#shared/compute/soils/soil-ground.ts';
 import { type EntityOf, entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
@@ -40,9 +41,11 @@ export function profilesRead(
       if (prepared === null || !prepared.finished)
         return { ...about, samples: [], remark: UNFINISHED, uplift: null };
       const places = placesOf(value, prepared.frame.map);
-      const samples = places.places.map((place) => sampleAt(place, prepared));
+      const origin = { id, typed: value.place.on !== 'sheet' };
+      const read = places.places.map((place) => sampleAt(place, origin, prepared));
+      const samples = read.map(({ sample }) => sample);
       if (!samples.every(hasPlace)) return { ...about, samples: [], remark: NOT_FINITE, uplift: null };
-      const uplift = use === 'base' ? upliftOn(samples, prepared.ground.gammaW, tailwater) : null;
+      const uplift = use === 'base' ? upliftOn(read, prepared.ground, tailwater) : null;
       return { ...about, samples, remark: remarkOn(places, value), uplift };
     });
 }
@@ -61,13 +64,17 @@ function remarkOn({ places, coarser }: ProfilePlaces, value: EntityOf<'profile'>
   };
 }
 
-function sampleAt({ at, distance }: ProfilePlace, prepared: PreparedNet): ProfileSample {
+function sampleAt({ at, distance }: ProfilePlace, origin: PlaceOrigin, prepared: PreparedNet): ReadSample {
   const { frame, ground, soils } = prepared;
   const onNet = frame.map.toSheet(at);
   const [x, y] = frame.toSheet(onNet);
   const [offset, elevation] = at;
+  const head = headAtPlace(onNet, ground, origin);
   const place = { distance, offset, elevation, at: [x, y] as [number, number] };
-  return { ...place, ...figuresAt(at, headAtPlace(onNet, ground), ground, soils) };
+  return {
+    sample: { ...place, ...figuresAt(at, head, ground, soils) },
+    doubt: head.status === 'read' ? head.doubt : null,
+  };
 }
 
 type Figures = Omit<ProfileSample, 'distance' | 'offset' | 'elevation' | 'at'>;
@@ -76,8 +83,10 @@ const NO_FIGURES = {
   reason: null,
   doubtful: null,
   totalHead: null,
+  totalHeadPlusMinus: null,
   pressureHead: null,
   porePressure: null,
+  porePressurePlusMinus: null,
   ru: null,
 };
 
@@ -102,8 +111,14 @@ function figuresAt(at: SectionPt, head: PlaceHead, ground: ReadingGround, soils:
     reason: null,
     doubtful: head.doubtful,
     totalHead: head.totalHead,
+    totalHeadPlusMinus: finiteOrNull(halfWidth(head.doubt.totalHead)),
     pressureHead,
     porePressure,
+    porePressurePlusMinus: finiteOrNull(halfWidth(head.doubt.porePressure)),
     ru: overburden === null ? null : pressureRatio(porePressure, overburden),
   };
+}
+
+function finiteOrNull(value: number): number | null {
+  return Number.isFinite(value) ? value : null;
 }

@@ -1,7 +1,14 @@
+import { type Contributions, halfWidth, weightedSum } from '#shared/compute/doubt/contributions.ts';
+import type { ReadingDoubt } from '#shared/compute/doubt/point-doubt.ts';
+import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
 import { type PressedPlace, type Resultant, resultantOf } from '#shared/compute/quantities/uplift.ts';
+import type { DoubtSource } from '#shared/contract/reading-doubt.ts';
 import type { ProfileReading, ProfileSample } from '#shared/contract/reading-quantities.ts';
 
 type Uplift = NonNullable<ProfileReading['uplift']>;
+
+/** A sample with the doubt of its head, cause by cause; null where nothing was read. */
+export type ReadSample = { readonly sample: ProfileSample; readonly doubt: ReadingDoubt | null };
 
 const LEFT_OUT = 'Drains and a cracked length are not in it: their effect is the engineer’s to add.';
 
@@ -12,10 +19,12 @@ const LEFT_OUT = 'Drains and a cracked length are not in it: their effect is the
  * `samples` pressures in kPa or lb/ft² and lengths in m or ft; `tailwater` null without one.
  */
 export function upliftOn(
-  samples: readonly ProfileSample[],
-  gammaW: number,
+  read: readonly ReadSample[],
+  ground: Pick<ReadingGround, 'gammaW' | 'doubt'>,
   tailwater: number | null,
 ): Uplift {
+  const samples = read.map(({ sample }) => sample);
+  const { gammaW } = ground;
   const missing = samples.filter(({ porePressure }) => porePressure === null).length;
   if (samples.length < 2 || missing > 0) {
     const note =
@@ -32,15 +41,72 @@ export function upliftOn(
     }));
   const still = (elevation: number) => gammaW * Math.max(0, (tailwater ?? elevation) - elevation);
   return {
-    total: finite(resultantOf(pressed(() => 0))),
-    excess: tailwater === null ? null : finite(resultantOf(pressed(still))),
+    total: finite(
+      resultantOf(pressed(() => 0)),
+      read,
+      read.map(({ doubt }) => doubt?.porePressure ?? []),
+    ),
+    excess:
+      tailwater === null
+        ? null
+        : finite(
+            resultantOf(pressed(still)),
+            read,
+            read.map((each) => excessDoubt(each, ground, tailwater)),
+          ),
     note: samples.some(({ porePressure }) => porePressure !== null && porePressure < 0)
       ? `Pressures below zero count as zero. ${LEFT_OUT}`
       : LEFT_OUT,
   };
 }
 
-function finite({ horizontal, vertical, size, actsAt, arm }: Resultant): Uplift['total'] {
+/** Of γw(h − tailwater): the elevation of the base drops out, and so does an error of the datum. */
+function excessDoubt(
+  { sample, doubt }: ReadSample,
+  { gammaW, doubt: net }: Pick<ReadingGround, 'gammaW' | 'doubt'>,
+  tailwater: number,
+): Contributions {
+  if (doubt === null) return [];
+  const { datumPlusMinus, tailwaterPlusMinus, gammaWPlusMinus } = net.water;
+  const of = (cause: string, source: DoubtSource, amount: number | null) => [
+    { cause, source, amount: amount ?? 0 },
+  ];
+  return weightedSum([
+    [gammaW, doubt.totalHead],
+    [-gammaW, of('datum', 'datum', datumPlusMinus)],
+    [-gammaW, of('tailwater', 'waterLevels', tailwaterPlusMinus)],
+    [(sample.totalHead ?? tailwater) - tailwater, of('gammaW', 'gammaW', gammaWPlusMinus)],
+  ]);
+}
+
+function finite(
+  { horizontal, vertical, size, actsAt, arm }: Resultant,
+  read: readonly ReadSample[],
+  doubts: readonly Contributions[],
+): Uplift['total'] {
   if (![horizontal, vertical, size, arm ?? 0, ...(actsAt ?? [])].every(Number.isFinite)) return null;
-  return { horizontal, vertical, size, actsAt: actsAt === null ? null : [actsAt[0], actsAt[1]], arm };
+  const along: [number, number] = size > 0 ? [horizontal / size, vertical / size] : [0, 1];
+  const spans = tributarySpans(
+    read.map(({ sample }) => sample),
+    along,
+  );
+  const plusMinus = halfWidth(weightedSum(spans.map((span, i) => [span, doubts[i]!])));
+  return {
+    horizontal,
+    vertical,
+    size,
+    plusMinus: Number.isFinite(plusMinus) ? plusMinus : null,
+    actsAt: actsAt === null ? null : [actsAt[0], actsAt[1]],
+    arm,
+  };
+}
+
+/** Length of base that each place presses on, seen along a direction: half of each piece beside it. */
+function tributarySpans(samples: readonly ProfileSample[], [ux, uz]: readonly [number, number]): number[] {
+  const turned = (samples.at(-1)?.offset ?? 0) >= (samples[0]?.offset ?? 0) ? 1 : -1;
+  const piece = (a: ProfileSample | undefined, b: ProfileSample | undefined) =>
+    a === undefined || b === undefined
+      ? 0
+      : turned * ((b.offset - a.offset) * uz - (b.elevation - a.elevation) * ux);
+  return samples.map((sample, i) => (piece(samples[i - 1], sample) + piece(sample, samples[i + 1])) / 2);
 }

@@ -1,5 +1,8 @@
 import type { NetCell } from '#shared/compute/cells/cells.ts';
 import { type ExitCell, exitCellsOf } from '#shared/compute/cells/exit-cells.ts';
+import { weightedSum } from '#shared/compute/doubt/contributions.ts';
+import { gradientPlusMinus } from '#shared/compute/doubt/gradient-doubt.ts';
+import { headLostDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
 import type { PreparedNet } from '#shared/compute/prepare-net.ts';
 import { headAtPlace } from '#shared/compute/profiles/place-head.ts';
@@ -59,6 +62,7 @@ function exitRead(exit: ExitCell, cell: NetCell, prepared: PreparedNet): ExitRea
     offset,
     elevation,
     cellGradient,
+    cellGradientPlusMinus: plusMinusOf(exit, prepared),
     length: exit.length,
     headLost: exit.headLost,
     pointGradient: point.gradient,
@@ -70,12 +74,22 @@ function exitRead(exit: ExitCell, cell: NetCell, prepared: PreparedNet): ExitRea
   };
 }
 
+/** Half-width (95 %) of the cell's average: the head lost in it shares the levels' doubt in proportion. */
+function plusMinusOf({ headLost, length }: ExitCell, { heads, ground }: PreparedNet): number | null {
+  const lost = (heads.headwater ?? 0) - (heads.outHead ?? 0);
+  if (headLost === null || !(lost > 0) || !(length > 0)) return null;
+  const headDoubt = weightedSum([[headLost / lost, headLostDoubt(ground.doubt)]]);
+  const { tracing } = ground.doubt;
+  const plusMinus = gradientPlusMinus({ headDifference: headLost, headDoubt, length, tracing });
+  return Number.isFinite(plusMinus) ? plusMinus : null;
+}
+
 function pointGradientAt(
   exit: ExitCell,
   { ground }: PreparedNet,
 ): { state: ExitReading['pointState']; gradient: number | null } {
   if (exit.atSingularEdge) return { state: 'singular', gradient: null };
-  const head = headAtPlace(sheetPx(...exit.exit), ground);
+  const head = headAtPlace(sheetPx(...exit.exit), ground, { id: exit.outlet, typed: false });
   if (head.status !== 'read' || head.gradient === null) return { state: 'unknown', gradient: null };
   const [dhdx, dhdz] = head.gradient;
   // The flow goes down the gradient of the head: it rises where the head falls upwards.

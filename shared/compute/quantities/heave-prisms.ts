@@ -1,3 +1,5 @@
+import { halfWidth, weightedSum } from '#shared/compute/doubt/contributions.ts';
+import { outletDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import { sectionPt, sheetPx } from '#shared/compute/frames.ts';
 import {
   firstOf,
@@ -10,8 +12,9 @@ import {
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { linesOfKind } from '#shared/compute/net/net-lines.ts';
 import type { Potential } from '#shared/compute/net/potentials.ts';
+import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
 import type { PreparedNet } from '#shared/compute/prepare-net.ts';
-import { headAtPlace } from '#shared/compute/profiles/place-head.ts';
+import { headAtPlace, type PlaceHead } from '#shared/compute/profiles/place-head.ts';
 import { saturatedUnitWeight } from '#shared/compute/quantities/gradients.ts';
 import { heaveFactor, meanOverBase } from '#shared/compute/quantities/heave.ts';
 import { wallTip } from '#shared/compute/quantities/wall-tip.ts';
@@ -86,9 +89,12 @@ function prismBeside(wall: Wall, prepared: PreparedNet): HeaveReading {
   const depth = wall.bed[1] - wall.tip[1];
   const width = WIDTH_PART * depth;
   const [tipX, tipY] = frame.toSheet(frame.map.toSheet(sectionPt(...wall.tip)));
-  const mean = meanOverBase((part) => {
+  const headAt = (part: number) => {
     const place = sectionPt(wall.tip[0] + wall.side * part * width, wall.tip[1]);
-    const head = headAtPlace(frame.map.toSheet(place), ground);
+    return headAtPlace(frame.map.toSheet(place), ground, { id: wall.wall, typed: false });
+  };
+  const mean = meanOverBase((part) => {
+    const head = headAt(part);
     return head.status === 'read' ? head.totalHead - wall.outlet.outHead : null;
   });
   const inside = sectionPt(wall.tip[0] + (wall.side * width) / 2, wall.tip[1] + depth / 2);
@@ -101,10 +107,29 @@ function prismBeside(wall: Wall, prepared: PreparedNet): HeaveReading {
     depth,
     width,
     meanExcessHead: mean,
+    meanExcessHeadPlusMinus: mean === null ? null : meanPlusMinus(headAt, ground),
   };
   const note = reasonAgainst(wall, width, mean, saturated, prepared);
   if (note !== '' || mean === null || saturated === null) return { ...about, factor: null, note };
   return { ...about, factor: heaveFactor(saturated - ground.gammaW, depth, mean, ground.gammaW), note };
+}
+
+const DOUBT_PIECES = 8;
+
+/** Half-width (95 %) of the mean head over the base less the outlet's: what all places share is kept together. */
+function meanPlusMinus(headAt: (part: number) => PlaceHead, ground: ReadingGround): number | null {
+  const places = Array.from({ length: DOUBT_PIECES }, (_, i) => headAt((i + 0.5) / DOUBT_PIECES));
+  const doubts = places.map((head) => (head.status === 'read' ? head.doubt.totalHead : []));
+  const { datumPlusMinus } = ground.doubt.water;
+  const datum = [{ cause: 'datum', source: 'datum' as const, amount: datumPlusMinus ?? 0 }];
+  const plusMinus = halfWidth(
+    weightedSum([
+      ...doubts.map((doubt) => [1 / DOUBT_PIECES, doubt] as const),
+      [-1, outletDoubt(ground.doubt)],
+      [-1, datum],
+    ]),
+  );
+  return Number.isFinite(plusMinus) ? plusMinus : null;
 }
 
 function reasonAgainst(
