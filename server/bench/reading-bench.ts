@@ -25,7 +25,19 @@ function sixtyLines(): FlowNetDocument {
     channels: 21,
     middle: [0, 100],
   });
-  return tracedDocument({ net, pxPerUnit: 60, jitterPx: 1.5, seed: 1, places: placesOver(net, POINTS, 3) });
+  const document = tracedDocument({
+    net,
+    pxPerUnit: 60,
+    jitterPx: 1.5,
+    seed: 1,
+    places: placesOver(net, POINTS, 3),
+  });
+  const { state, points } = readNet(document);
+  // A net that is not read would be measured as a fast one.
+  if (state !== 'read' || points.some(({ byField }) => byField === null)) {
+    throw new Error('The net of the bench is not read.');
+  }
+  return document;
 }
 
 /** The document with one vertex of an equipotential dragged by a few pixels; another line each time. */
