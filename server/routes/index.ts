@@ -1,6 +1,7 @@
 import type { RouteRecord } from '#server/http/route-record.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
+import { damSeepageRoutes } from './dam-seepage-routes.ts';
 import { drawingRoutes } from './drawing-routes.ts';
 import { liveRoutes } from './live-routes.ts';
 import { mailRoutes } from './mail-routes.ts';
@@ -19,6 +20,7 @@ export const routes: readonly RouteRecord[] = [
   ...sessionRoutes,
   ...peopleRoutes,
   ...damRoutes,
+  ...damSeepageRoutes,
   ...waitingRoutes,
   ...liveRoutes,
   ...mailRoutes,
