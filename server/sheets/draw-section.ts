@@ -1,0 +1,229 @@
+import type { LineKind, SheetPoint } from '#shared/contract/document.ts';
+import type { SheetContent } from '#shared/text/calculation-sheet/content.ts';
+import type { SectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
+import {
+  type Doc,
+  drawLine,
+  FOOT_MM,
+  GREY,
+  INK,
+  LEADING,
+  MARGIN_MM,
+  mm,
+  type Paper,
+  pageSize,
+} from './page-flow.ts';
+import type { SheetFonts } from './sheet-fonts.ts';
+import { textLines } from './text-lines.ts';
+
+/** How a kind of line is printed: colour as on the screen, and a dash of its own, so that a grey print tells them apart. */
+const LOOKS: Record<LineKind, { colour: string; widthPt: number; dashPt: readonly number[] }> = {
+  equipotential: { colour: '#0f6b66', widthPt: 0.9, dashPt: [] },
+  flowLine: { colour: '#a8472b', widthPt: 0.9, dashPt: [9, 1.6] },
+  phreaticLine: { colour: '#2b5ea8', widthPt: 1.1, dashPt: [4, 2.4] },
+  submergedFace: { colour: '#0f6b66', widthPt: 1.6, dashPt: [] },
+  outflowFace: { colour: '#0f6b66', widthPt: 1.6, dashPt: [1.5, 2] },
+  drain: { colour: '#5b5346', widthPt: 1.3, dashPt: [3, 1.4] },
+  impervious: { colour: '#5b5346', widthPt: 1.1, dashPt: [] },
+  ground: { colour: '#5b5346', widthPt: 0.8, dashPt: [] },
+  soilBoundary: { colour: '#5b5346', widthPt: 0.8, dashPt: [5, 1.4, 1, 1.4] },
+};
+const POINT = '#6d2a78';
+const LABEL_PT = 7;
+const BLOCK_MM: Record<Paper, number> = { A4: 62, A3: 78 };
+/** Below the figure, for scale bars and direction of flow. */
+const BELOW_MM = 16;
+
+export interface FigurePlace {
+  x: number;
+  y: number;
+  /** Points on paper per sheet pixel. */
+  scale: number;
+  widthPt: number;
+  heightPt: number;
+}
+
+/** Where the figure lies on the lying first page: as large as fits beside the title block. */
+export function figurePlace(paper: Paper, crop: SectionFigure['crop']): FigurePlace {
+  const [pageWidth, pageHeight] = pageSize(paper, true);
+  const width = pageWidth - mm(2 * MARGIN_MM + BLOCK_MM[paper] + 5);
+  const height = pageHeight - mm(2 * MARGIN_MM + FOOT_MM + BELOW_MM + 9);
+  const scale = Math.min(width / crop[2], height / crop[3]);
+  return {
+    x: mm(MARGIN_MM),
+    y: mm(MARGIN_MM + 9),
+    scale,
+    widthPt: crop[2] * scale,
+    heightPt: crop[3] * scale,
+  };
+}
+
+/** The first page: the scan with the traces over it, and the title block. */
+export function drawSectionPage(
+  doc: Doc,
+  fonts: SheetFonts,
+  paper: Paper,
+  content: SheetContent,
+  scan: Buffer | null,
+): void {
+  doc.addPage({ size: pageSize(paper, true), margin: 0 });
+  doc.outline.addItem('Section');
+  const say = teller(doc, fonts);
+  say(content.title, mm(MARGIN_MM), mm(MARGIN_MM), {
+    sizePt: 12,
+    style: 'bold',
+    widthPt: doc.page.width - mm(2 * MARGIN_MM),
+  });
+  drawTitleBlock(doc, fonts, paper, content);
+  const { figure } = content;
+  if (figure === null) {
+    say('Nothing is traced yet, so there is no section to show.', mm(MARGIN_MM), mm(MARGIN_MM + 12), {});
+    return;
+  }
+  const place = figurePlace(paper, figure.crop);
+  doc.save().rect(place.x, place.y, place.widthPt, place.heightPt).clip();
+  if (scan) doc.image(scan, place.x, place.y, { width: place.widthPt, height: place.heightPt });
+  drawTraces(doc, say, figure, place);
+  doc.restore();
+  doc.lineWidth(0.6).strokeColor(INK).rect(place.x, place.y, place.widthPt, place.heightPt).stroke();
+  drawBelow(doc, say, figure, place);
+}
+
+interface SayOptions {
+  sizePt?: number;
+  style?: 'plain' | 'bold';
+  colour?: string;
+  widthPt?: number;
+}
+type Say = (text: string, x: number, y: number, options: SayOptions) => number;
+
+/** Sets text with its top at a place; gives the height taken. */
+const teller =
+  (doc: Doc, fonts: SheetFonts): Say =>
+  (text, x, y, { sizePt = LABEL_PT, style = 'plain', colour = INK, widthPt = mm(80) }) => {
+    const lines = textLines(fonts, text, style, sizePt, widthPt);
+    lines.forEach((line, i) => {
+      drawLine(doc, line, x, y + i * sizePt * LEADING, sizePt, colour);
+    });
+    return lines.length * sizePt * LEADING;
+  };
+
+function drawTraces(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlace): void {
+  const [left, top] = figure.crop;
+  const on = ([x, y]: SheetPoint): [number, number] => [
+    place.x + (x - left) * place.scale,
+    place.y + (y - top) * place.scale,
+  ];
+  const path = (points: readonly SheetPoint[]) =>
+    points.forEach((point, i) => {
+      const [x, y] = on(point);
+      if (i === 0) doc.moveTo(x, y);
+      else doc.lineTo(x, y);
+    });
+  for (const line of figure.lines) {
+    const { colour, widthPt, dashPt } = LOOKS[line.kind];
+    doc.save().lineWidth(widthPt).strokeColor(colour).lineJoin('round');
+    if (dashPt.length > 0) doc.dash([...dashPt] as unknown as number);
+    path(line.points);
+    doc.stroke().restore();
+  }
+  doc.lineWidth(0.8).strokeColor(POINT);
+  for (const profile of figure.profiles) {
+    path(profile);
+    doc.stroke();
+  }
+  for (const line of figure.lines) {
+    const [first] = line.points;
+    if (first && line.label) labelAt(doc, say, line.label, on(first), LOOKS[line.kind].colour);
+  }
+  for (const { name, at } of figure.knownPoints) {
+    const [x, y] = on(at);
+    doc
+      .lineWidth(0.7)
+      .strokeColor(INK)
+      .moveTo(x - 4, y)
+      .lineTo(x + 4, y)
+      .moveTo(x, y - 4)
+      .lineTo(x, y + 4)
+      .stroke();
+    labelAt(doc, say, name, [x, y], INK);
+  }
+  for (const { name, at } of figure.points) {
+    const [x, y] = on(at);
+    doc.lineWidth(0.9).strokeColor(POINT).circle(x, y, 2.4).stroke();
+    labelAt(doc, say, name, [x, y], POINT);
+  }
+}
+
+/** A label beside a place, on a pale ground, so that it can be read over the scan. */
+function labelAt(doc: Doc, say: Say, text: string, [x, y]: [number, number], colour: string): void {
+  const width = doc.fontSize(LABEL_PT).widthOfString(text);
+  doc
+    .save()
+    .fillColor('#ffffff', 0.8)
+    .rect(x + 3, y - LABEL_PT - 2, width + 3, LABEL_PT + 2)
+    .fill()
+    .restore();
+  doc.fillOpacity(1);
+  say(text, x + 4, y - LABEL_PT - 2, { colour });
+}
+
+function drawBelow(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlace): void {
+  let x = place.x;
+  const y = place.y + place.heightPt + mm(5);
+  for (const bar of figure.scaleBars) {
+    const length = bar.lengthPx * place.scale;
+    doc.lineWidth(0.8).strokeColor(INK).rect(x, y, length, 4).stroke();
+    doc
+      .fillColor(INK)
+      .rect(x, y, length / 2, 4)
+      .fill();
+    say('0', x - 2, y + 5, {});
+    say(bar.label, x + length - 4, y + 5, {});
+    x += length + mm(34);
+  }
+  if (figure.flow === null) return;
+  const [from, to] = figure.flow === 'right' ? [x, x + mm(18)] : [x + mm(18), x];
+  const back = figure.flow === 'right' ? -6 : 6;
+  doc
+    .lineWidth(1)
+    .strokeColor(INK)
+    .moveTo(from, y + 2)
+    .lineTo(to, y + 2)
+    .stroke();
+  doc
+    .fillColor(INK)
+    .polygon([to, y + 2], [to + back, y - 1], [to + back, y + 5])
+    .fill();
+  say('direction of flow', x, y + 7, {});
+}
+
+function drawTitleBlock(doc: Doc, fonts: SheetFonts, paper: Paper, { titleBlock }: SheetContent): void {
+  const width = mm(BLOCK_MM[paper]);
+  const x = doc.page.width - mm(MARGIN_MM) - width;
+  const top = mm(MARGIN_MM + 9);
+  const label = width * 0.3;
+  let y = top;
+  for (const cell of titleBlock) {
+    const names = textLines(fonts, cell.label, 'plain', LABEL_PT, label - 6);
+    const values = textLines(fonts, cell.value, 'plain', LABEL_PT + 0.5, width - label - 6);
+    const height = Math.max(names.length, values.length) * (LABEL_PT + 0.5) * LEADING + 4;
+    names.forEach((line, i) => {
+      drawLine(doc, line, x + 3, y + 2 + i * LABEL_PT * LEADING, LABEL_PT, GREY);
+    });
+    values.forEach((line, i) => {
+      drawLine(doc, line, x + label, y + 2 + i * (LABEL_PT + 0.5) * LEADING, LABEL_PT + 0.5);
+    });
+    y += height;
+    doc
+      .lineWidth(0.4)
+      .strokeColor(INK)
+      .moveTo(x, y)
+      .lineTo(x + width, y)
+      .stroke();
+  }
+  doc
+    .lineWidth(0.9)
+    .rect(x, top, width, y - top)
+    .stroke();
+}
