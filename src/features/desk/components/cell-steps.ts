@@ -12,6 +12,6 @@ export const FORM_OF_CELL: Readonly<Partial<Record<CellId, MarginForm>>> = {
   channels: { form: 'count' },
   headPerDrop: { form: 'count' },
   permeability: { form: 'permeability' },
-  seepage: { form: 'permeability' },
+  seepage: { form: 'seepage' },
   netCheck: { form: 'findings' },
 };

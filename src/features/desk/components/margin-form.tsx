@@ -15,13 +15,24 @@ import { PermeabilityForm } from './permeability-form.tsx';
 import { PointForm } from './point-form.tsx';
 import { GridProfileForm, PasteProfileForm } from './profile-forms.tsx';
 import { ReadingPane } from './reading-pane.tsx';
+import { SeepagePane } from './seepage-pane.tsx';
 import { SetOutForm } from './set-out-form.tsx';
 import { SoilForm } from './soil-form.tsx';
 import { WaterForm } from './water-form.tsx';
 
 /** What is open in the margin in the place of the notes. */
 export type MarginForm =
-  | { form: 'loadCase' | 'water' | 'permeability' | 'count' | 'point' | 'findings' | 'independent' }
+  | {
+      form:
+        | 'loadCase'
+        | 'water'
+        | 'permeability'
+        | 'count'
+        | 'point'
+        | 'findings'
+        | 'independent'
+        | 'seepage';
+    }
   | { form: 'pasteProfile' | 'gridProfile' }
   /** `placedId`: the known point just placed, whose offset is typed next. */
   | { form: 'setOut'; placedId?: string }
@@ -98,7 +109,6 @@ export function MarginFormPane({
           {...form}
           newId={store.newId}
           onOpenSoil={(soilId) => onOpen({ form: 'soil', soilId })}
-          onOpen={onOpen}
         />
       );
     case 'soil':
@@ -140,6 +150,8 @@ export function MarginFormPane({
           }}
         />
       );
+    case 'seepage':
+      return <SeepagePane {...form} onOpen={onOpen} />;
     case 'independent':
       return <IndependentPane store={store} checks={checks} onClose={onClose} onSheet={onSheet} />;
     case 'reading':
@@ -150,6 +162,7 @@ export function MarginFormPane({
           pointId={open.pointId}
           onOpen={onOpen}
           onClose={onClose}
+          onSheet={onSheet}
         />
       );
   }

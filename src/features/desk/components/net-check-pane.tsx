@@ -3,13 +3,14 @@ import { Button } from '#client/components/button.tsx';
 import { CheckField } from '#client/components/field.tsx';
 import { netCheckText as text } from '#client/text/net-check.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
-import type { Finding } from '#shared/contract/reading.ts';
+import type { Finding, NetReading } from '#shared/contract/reading.ts';
 import type { NetCheckReading, NetFault } from '#shared/contract/reading-net-check.ts';
 import { fixedText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { faultKey } from '../model/check-guides.ts';
 import type { DeskChecks } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import { faultPlace } from './fault-place.ts';
 import { FindingsList } from './findings-list.tsx';
 import { FormPane } from './form-pane.tsx';
 import type { MarginForm } from './margin-form.tsx';
@@ -34,7 +35,9 @@ export function NetCheckPane({ store, checks, onShow, onOpen, onClose, onSheet }
   return (
     <FormPane title={text.title} onClose={onClose}>
       {reading ? null : <p className="m-0 text-ink-2">{text.working}</p>}
-      {check ? <Drawing check={check} store={store} checks={checks} onSheet={onSheet} /> : null}
+      {reading && check ? (
+        <Drawing reading={reading} check={check} store={store} checks={checks} onSheet={onSheet} />
+      ) : null}
       {reading ? (
         <MarginSection title={text.found}>
           <FindingsList findings={byWeight(reading.findings)} onShow={onShow} />
@@ -53,13 +56,14 @@ export function NetCheckPane({ store, checks, onShow, onOpen, onClose, onSheet }
 }
 
 interface DrawingProps {
+  reading: NetReading;
   check: NetCheckReading;
   store: DeskStore;
   checks: DeskChecks;
   onSheet: () => void;
 }
 
-function Drawing({ check, store, checks, onSheet }: DrawingProps) {
+function Drawing({ reading, check, store, checks, onSheet }: DrawingProps) {
   const shown = useStore(checks, (state) => state.netCheckShown);
   const chosen = useStore(checks, (state) => state.chosenFault);
   const unitSystem = useStore(store, (state) => state.document.unitSystem);
@@ -84,6 +88,7 @@ function Drawing({ check, store, checks, onSheet }: DrawingProps) {
             <Fault
               key={faultKey(fault)}
               fault={fault}
+              place={faultPlace(fault, check, reading.lines)}
               unitSystem={unitSystem}
               chosen={faultKey(fault) === chosen}
               onChoose={() => {
@@ -102,11 +107,14 @@ function Drawing({ check, store, checks, onSheet }: DrawingProps) {
 
 function Fault({
   fault,
+  place,
   unitSystem,
   chosen,
   onChoose,
 }: {
   fault: NetFault;
+  /** Between which lines it lies. */
+  place: string;
   unitSystem: UnitSystem;
   chosen: boolean;
   onChoose: () => void;
@@ -120,7 +128,10 @@ function Fault({
         className={`touch grid w-full grid-cols-[minmax(0,1fr)_auto] gap-x-3 px-1.5 py-1 text-left hover:bg-hover ${chosen ? 'bg-chosen font-semibold' : ''}`}
         onClick={onChoose}
       >
-        <span>{fault.text}</span>
+        <span>
+          {fault.text}
+          <span className="block text-sm font-normal text-ink-2">{place}</span>
+        </span>
         <span className="text-right whitespace-nowrap text-ink-2">
           {text.effect(drops)}
           {pressure === null ? null : (

@@ -3,19 +3,16 @@ import { singleOf } from '#shared/contract/document.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { FlowUnitField } from './flow-unit-field.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
-import type { MarginForm } from './margin-form.tsx';
-import { SeepageDoubt } from './seepage-doubt.tsx';
 import { SoilFields, type SoilProperties } from './soil-fields.tsx';
 import { SoilList } from './soil-list.tsx';
 
 interface PermeabilityFormProps extends DeskFormProps {
   newId: () => string;
   onOpenSoil: (soilId: string) => void;
-  onOpen: (form: MarginForm) => void;
 }
 
 /** Permeability and weights of the section's soil, and the soils that lie in regions of their own. */
-export function PermeabilityForm({ newId, onOpenSoil, onOpen, ...form }: PermeabilityFormProps) {
+export function PermeabilityForm({ newId, onOpenSoil, ...form }: PermeabilityFormProps) {
   const { document, reading, disabled, run } = form;
   const held = singleOf(document, 'permeability');
   if (!held) return null;
@@ -27,7 +24,6 @@ export function PermeabilityForm({ newId, onOpenSoil, onOpen, ...form }: Permeab
       <FormFindings findings={findingsFor(reading?.findings, 'permeability', 'seepage')} />
       <SoilFields soil={held.value} unitSystem={document.unitSystem} disabled={disabled} change={change} />
       <FlowUnitField unitSystem={document.unitSystem} />
-      <SeepageDoubt reading={reading} onOpen={disabled ? null : onOpen} />
       <SoilList document={document} disabled={disabled} run={run} newId={newId} onOpenSoil={onOpenSoil} />
     </FormPane>
   );

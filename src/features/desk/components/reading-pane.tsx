@@ -1,4 +1,5 @@
 import { useStore } from 'zustand';
+import { Button } from '#client/components/button.tsx';
 import { explanationText as text } from '#client/text/explanation.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
@@ -21,10 +22,12 @@ interface ReadingPaneProps {
   pointId: string;
   onOpen: (form: MarginForm) => void;
   onClose: () => void;
+  /** Shows the sheet, where it is not beside the pane already. */
+  onSheet: () => void;
 }
 
 /** How the figure of a point came about, in words and over the sheet, and how far it can be trusted. */
-export function ReadingPane({ store, pointId, onOpen, onClose }: ReadingPaneProps) {
+export function ReadingPane({ store, pointId, onOpen, onClose, onSheet }: ReadingPaneProps) {
   const document = useStore(store, (state) => state.document);
   const reading = useStore(store, (state) => state.reading);
   const readOnly = useStore(store, (state) => state.readOnly);
@@ -36,6 +39,19 @@ export function ReadingPane({ store, pointId, onOpen, onClose }: ReadingPaneProp
   return (
     <FormPane title={text.title(point.name)} onClose={onClose}>
       <Explanation point={point} />
+      {point.sheetAt ? (
+        <div>
+          <Button
+            look="quiet"
+            onClick={() => {
+              if (point.sheetAt) store.lookAt(point.sheetAt);
+              onSheet();
+            }}
+          >
+            {text.goThere}
+          </Button>
+        </div>
+      ) : null}
       {byHand ? <TwoReadings point={point} document={document} ways={ways} /> : null}
       {point.doubt ? (
         <PointDoubt point={point} document={document} onOpen={readOnly ? null : onOpen} />

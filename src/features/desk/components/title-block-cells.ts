@@ -213,13 +213,13 @@ function seepageOf(document: FlowNetDocument, reading: NetReading | null, unit: 
 /** Findings that say in a sentence what the check's own line says in counts. */
 const SAID_BY_CHECK: readonly string[] = ['cellsNotSquare', 'anglesNotSquare', 'channelFlowsDiffer'];
 
-/** What stands in the way comes first; else how the net is drawn, and how many other questions there are. */
 /** A unit with its power raised as other powers are. */
 function unitRuns(words: string): Run[] {
   const [before = '', after] = words.split('³');
   return after === undefined ? [before] : [before, { sup: '3' }, after];
 }
 
+/** What stands in the way comes first; else how the net is drawn, and how many other questions there are. */
 function netCheckOf(reading: NetReading | null): Told {
   const label = text.labels.netCheck;
   if (!reading) return { label, value: WAITING };

@@ -34,6 +34,7 @@ export function placeWords(items: readonly SceneItem[], zoom: number): SceneItem
   const taken: Rect[] = points.map(({ at }) =>
     rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX),
   );
+  taken.push(...ofShape(marks, 'doubt').map((mark) => doubtRect(mark, zoom)));
   const offsets = new Map<string, readonly [number, number]>();
   for (const group of [
     points,
@@ -96,6 +97,15 @@ function besideFirst(width: number): ReadonlyArray<readonly [number, number]> {
     [0, -19],
     [0, 19],
   ];
+}
+
+const DOUBT_SIZE_PX = 20;
+/** The question mark stands over the ring. */
+const DOUBT_HEIGHT_PX = 34;
+
+function doubtRect({ at }: SceneMark, zoom: number): Rect {
+  const middle = at[1] * zoom - (DOUBT_HEIGHT_PX - DOUBT_SIZE_PX) / 2;
+  return rectAbout(at[0] * zoom, middle, DOUBT_SIZE_PX, DOUBT_HEIGHT_PX);
 }
 
 const CALLOUT_RINGS_PX = [18, 34, 52, 72];

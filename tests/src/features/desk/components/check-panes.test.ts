@@ -5,11 +5,13 @@ import { DoubtSharesList, formOfSource } from '#client/features/desk/components/
 import { HeadTable, SeepageTable } from '#client/features/desk/components/independent-tables.tsx';
 import { NetCheckPane } from '#client/features/desk/components/net-check-pane.tsx';
 import { ReadingPane } from '#client/features/desk/components/reading-pane.tsx';
+import { SeepagePane } from '#client/features/desk/components/seepage-pane.tsx';
 import { createDeskChecks } from '#client/features/desk/model/desk-checks.ts';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
+import { changed } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 import { withFlowLineMoved } from '#tests/support/exact-nets/poorly-drawn.ts';
@@ -33,7 +35,13 @@ function readingPane(document: FlowNetDocument, change: (point: PointReading) =>
   const points = read.points.map(change);
   const store = createDeskStore({ document }, { reading: { ...read, points } });
   return textOf(
-    createElement(ReadingPane, { store, pointId: points[0]!.id, onOpen: nothing, onClose: nothing }),
+    createElement(ReadingPane, {
+      store,
+      pointId: points[0]!.id,
+      onOpen: nothing,
+      onClose: nothing,
+      onSheet: nothing,
+    }),
   );
 }
 
@@ -102,8 +110,48 @@ describe('the pane of the net check', () => {
     const effects = [...text.matchAll(/± (\d+\.\d\d) drop/g)].map(([, drops]) => Number(drops));
     expect(effects.length).toBeGreaterThan(3);
     expect(effects).toEqual([...effects].sort((a, b) => b - a));
-    expect(text).toMatch(/A cell has B\/L \d/);
+    expect(text).toMatch(/A cell has B\/L \d\.\d+ instead of 1\.Between 1\d\d and 1\d\d, channel \d/);
     expect(text).toContain('Channel 1 | ');
+  });
+});
+
+describe('what the seepage is made of', () => {
+  const pane = (document: FlowNetDocument) =>
+    textOf(
+      createElement(SeepagePane, {
+        document,
+        reading: readNet(document),
+        disabled: false,
+        onOpen: nothing,
+        onClose: nothing,
+      }),
+    );
+
+  it('shows the terms that make q, and the factor within which it is known with its sources', () => {
+    const document = changed(drawn, 'permeability', (value) => ({ ...value, k: 2.5e-6, factor: 3 }));
+    const text = pane(document);
+    expect(text).toContain('Permeability k | 2.5 × 10−6 m/s');
+    expect(text).toContain('Head per drop Δh, m | 2.00');
+    expect(text).toContain('Channels Nf | 3');
+    // k·Δh·Nf·(B/L) = 2.5e-6 · 2 · 3, 1.5e-5, shown with the one figure that k deserves.
+    expect(text).toMatch(/Seepage q, m³\/s per metre \| 2 × 10−5/);
+    expect(text).toMatch(/×\/÷ 3\.\d/);
+    expect(text).toMatch(/Permeability\d+ %/);
+    expect(text).toMatch(/Water levels&lt; 1 %/);
+    expect(text).not.toContain('In the transformed section');
+  });
+
+  it('says that q has no bounds while k has no factor, and which k counts across the bedding', () => {
+    const document = changed(drawn, 'permeability', (value) => ({
+      ...value,
+      k: 4e-6,
+      kv: 1e-6,
+      factor: null,
+    }));
+    const text = pane(document);
+    expect(text).toContain('√(4 × 10−6 · 1 × 10−6) m/s');
+    expect(text).toContain('which is 2.00 × 10−6 m/s');
+    expect(text).toContain('The permeability has no ×/÷ factor');
   });
 });
 
