@@ -131,7 +131,7 @@ const singles: fc.Arbitrary<DocumentEntity>[] = [
     kind: fc.constant('waterLevels' as const),
     headwater: maybe(anyNumber),
     tailwater: maybe(anyNumber),
-    gammaW: positive,
+    gammaW: fc.oneof(fc.constantFrom(9.81, 62.4), positive),
     source: fc.constant(''),
     headwaterPlusMinus: maybe(plusMinus),
     tailwaterPlusMinus: maybe(plusMinus),

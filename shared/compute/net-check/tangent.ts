@@ -146,14 +146,22 @@ function inverseOf(sums: readonly number[]): number[][] | null {
   ].map((row) => row.map((entry) => entry / determinant));
 }
 
+/** Direction of the segment at `s`, or of the shortest run of segments round it that has one. */
 function chordAt(shape: Polyline, s: number, accuracyPx: number): Tangent {
-  const i = segmentAlong(shape, s);
-  const length = shape.cum[i + 1]! - shape.cum[i]!;
-  return {
-    direction: [
-      (shape.xy[2 * i + 2]! - shape.xy[2 * i]!) / length,
-      (shape.xy[2 * i + 3]! - shape.xy[2 * i + 1]!) / length,
-    ],
-    tremor: (Math.SQRT2 * accuracyPx) / length,
-  };
+  const { cum, xy } = shape;
+  const count = cum.length;
+  let first = segmentAlong(shape, s);
+  let last = first + 1;
+  for (;;) {
+    const across: Pair = [xy[2 * last]! - xy[2 * first]!, xy[2 * last + 1]! - xy[2 * first + 1]!];
+    const length = Math.hypot(...across);
+    if (length > 0) {
+      const direction: Pair = [across[0] / length, across[1] / length];
+      // A direction that the tracing leaves open altogether is off by no more than a quarter turn.
+      return { direction, tremor: Math.min(Math.PI / 2, (Math.SQRT2 * accuracyPx) / length) };
+    }
+    if (first === 0 && last === count - 1) return { direction: [1, 0], tremor: Math.PI / 2 };
+    first = Math.max(0, first - 1);
+    last = Math.min(count - 1, last + 1);
+  }
 }

@@ -8,6 +8,9 @@ import { permeabilityInMetresPerSecond } from '#shared/compute/units.ts';
 import type { EntityOf, UnitSystem } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
 
+/** A unit weight this many times beyond the range of waters is none of water: it belongs to another unit. */
+const NO_WATER = 1.5;
+
 /** Soils and rocks lie within these permeabilities, m/s; what lies outside is more often a slip of the unit. */
 const LEAST_K = 1e-13;
 const GREATEST_K = 1;
@@ -59,16 +62,21 @@ export function questionLevels(water: EntityOf<'waterLevels'>, potentials: reado
 
 /**
  * Questions a unit weight of water that belongs to the other unit system or to no water: outside 9.7 to 10.4 kN/m³
- * (62 to 66 lb/ft³), the range from warm fresh water to sea water.
+ * (62 to 66 lb/ft³), the range from warm fresh water to sea water. One that is off by half or more is refused, as every
+ * pressure would be.
  */
 export function questionUnitWeight(gammaW: number, system: UnitSystem): Finding[] {
   const [least, greatest, unit] = system === 'SI' ? [9.7, 10.4, 'kN/m³'] : [62, 66, 'lb/ft³'];
   if (gammaW >= least && gammaW <= greatest) return [];
+  const isNoWater = gammaW < least / NO_WATER || gammaW > greatest * NO_WATER;
+  const entered = `The unit weight of water is entered as ${gammaW} ${unit}; water lies between ${least} and ${greatest}.`;
   return [
     makeFinding(
-      'question',
+      isNoWater ? 'wrong' : 'question',
       'unitWeightImplausible',
-      `The unit weight of water is entered as ${gammaW} ${unit}; water lies between ${least} and ${greatest}. Check the figure and its unit.`,
+      isNoWater
+        ? `${entered} Every pressure would be as many times too great or too small: correct the figure, which may be one of another unit.`
+        : `${entered} Check the figure and its unit.`,
       { cell: 'headwater' },
     ),
   ];

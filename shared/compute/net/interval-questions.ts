@@ -126,16 +126,27 @@ function partChannelFinding(
     );
 }
 
-/** A reading between two lines from between which one seems to be missing, marked as in question. */
+/**
+ * A reading in a net from which a line seems to be missing, marked as in question: the count is short of a drop then, and
+ * every head that follows from it is wrong, by most of a drop beside the place and by less towards the boundaries.
+ */
 export function markWide(point: PointReading, wide: IntervalQuestions['wide']): PointReading {
   const { between, id, sheetAt } = point;
-  if (between === null || !wide.some((pair) => pair.includes(between.before) && pair.includes(between.after)))
-    return point;
-  const found = makeFinding(
-    'question',
-    'lineMissingBeside',
-    'Between the two lines beside the point an equipotential seems to be missing; then this and every reading beyond it is wrong. Check the lines there.',
-    { cell: 'netCheck', entityIds: [id], at: sheetAt },
-  );
+  if (between === null || wide.length === 0) return point;
+  const isBeside = wide.some((pair) => pair.includes(between.before) && pair.includes(between.after));
+  const details = { cell: 'netCheck' as const, entityIds: [id], at: sheetAt };
+  const found = isBeside
+    ? makeFinding(
+        'question',
+        'lineMissingBeside',
+        'Between the two lines beside the point an equipotential seems to be missing; then this and every reading beyond it is wrong. Check the lines there.',
+        details,
+      )
+    : makeFinding(
+        'question',
+        'lineMissingElsewhere',
+        'Elsewhere in the net an equipotential seems to be missing; then the count is wrong, and this reading with it, by up to a drop. Trace that line and count again.',
+        details,
+      );
   return { ...point, findings: [...point.findings, found] };
 }

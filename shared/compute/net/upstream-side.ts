@@ -5,8 +5,8 @@ import type { EntityOf } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
 
 /**
- * Questions a headwater boundary that lies downstream of every outlet by what is said of the section: then the side or
- * the levels have been taken for one another. `upstream` is the side as displayed, null until said; shapes in
+ * Refuses a headwater boundary that lies downstream of every outlet by what is said of the section: then the side or the
+ * levels have been taken for one another, and in the second case every head of the net is that of the other end. `upstream` is the side as displayed, null until said; shapes in
  * base-raster pixels, left and right along the section's own horizontal.
  */
 export function questionUpstream(
@@ -27,9 +27,9 @@ export function questionUpstream(
   if (!contradicted) return [];
   return [
     makeFinding(
-      'question',
+      'wrong',
       'upstreamDisagrees',
-      `Upstream is said to be at the ${upstream}, but the headwater boundary lies on the other side of the outlet. Check that side, and which boundary carries which water.`,
+      `Upstream is said to be at the ${upstream}, but the headwater boundary lies on the other side of the outlet. Correct that side, or which boundary carries which water; until then no figure is given.`,
       { cell: 'headwater' },
     ),
   ];

@@ -336,6 +336,40 @@ describe('a point', () => {
   });
 });
 
+describe('inputs that would make every figure wrong give none', () => {
+  it('a unit weight of water of the other unit system', () => {
+    const reading = readNet(changed(parabolaNet(), 'waterLevels', (value) => ({ ...value, gammaW: 62.4 })));
+    expect(codesOf(reading)).toContain('unitWeightImplausible');
+    expect(reading.state).toBe('unfinished');
+    expect(reading.points.every(({ porePressure }) => porePressure === null)).toBe(true);
+  });
+
+  it('an upstream side that the headwater boundary denies, mirrored or not', () => {
+    for (const mirrored of [false, true]) {
+      const bed = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit, mirrored, turnDeg: 8 });
+      const saying = (upstream: 'left' | 'right') =>
+        readNet(changed(bed, 'setOut', (value) => ({ ...value, upstream })));
+      expect(saying(mirrored ? 'right' : 'left').state).toBe('read');
+      const denied = saying(mirrored ? 'left' : 'right');
+      expect(codesOf(denied)).toContain('upstreamDisagrees');
+      expect(denied.state).toBe('unfinished');
+    }
+  });
+
+  it('two waters marked on one another’s boundaries', () => {
+    const bed = exactNetDocument(apron.net, {
+      pxPerUnit: apron.pxPerUnit,
+      readings: [{ at: [0, 90], clicked: true }],
+    });
+    const swapped = withLines(bed, 'submergedFace', (value) => ({
+      ...value,
+      water: value.water === 'headwater' ? ('tailwater' as const) : ('headwater' as const),
+    }));
+    expect(readNet(bed).points[0]!.totalHead).not.toBeNull();
+    expect(readNet(swapped).points[0]!.totalHead).toBeNull();
+  });
+});
+
 describe('implausible inputs are questioned but not refused', () => {
   it('a permeability that no soil has', () => {
     const reading = readNet(
@@ -353,20 +387,11 @@ describe('implausible inputs are questioned but not refused', () => {
     for (const plausible of [0.2, 1, 5]) expect(codesAt(plausible)).not.toContain('cellRatioImplausible');
   });
 
-  it('a unit weight of water of the other unit system', () => {
-    const reading = readNet(changed(parabolaNet(), 'waterLevels', (value) => ({ ...value, gammaW: 62.4 })));
+  it('a unit weight of water that few waters have', () => {
+    const reading = readNet(changed(parabolaNet(), 'waterLevels', (value) => ({ ...value, gammaW: 9.5 })));
     expect(codesOf(reading)).toContain('unitWeightImplausible');
+    expect(reading.state).toBe('read');
     expect(codesOf(readNet(parabolaNet()))).not.toContain('unitWeightImplausible');
-  });
-
-  it('an upstream side that the headwater boundary denies, mirrored or not', () => {
-    for (const mirrored of [false, true]) {
-      const bed = exactNetDocument(apron.net, { pxPerUnit: apron.pxPerUnit, mirrored, turnDeg: 8 });
-      const saying = (upstream: 'left' | 'right') =>
-        codesOf(readNet(changed(bed, 'setOut', (value) => ({ ...value, upstream }))));
-      expect(saying(mirrored ? 'right' : 'left')).not.toContain('upstreamDisagrees');
-      expect(saying(mirrored ? 'left' : 'right')).toContain('upstreamDisagrees');
-    }
   });
 
   it('a headwater with a digit too many', () => {

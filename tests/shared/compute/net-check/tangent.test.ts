@@ -80,6 +80,18 @@ describe('direction of a traced line', () => {
     expect(direction[0]).toBeCloseTo(0.6, 12);
     expect(direction[1]).toBeCloseTo(0.8, 12);
   });
+
+  it('is that of the run before where a segment is lost in rounding', () => {
+    const line = polylineOf([
+      [0, 0],
+      [1e6, 0],
+      [1e6, 1e-12],
+    ])!;
+    const { direction, tremor } = tangentOfCurve(line, 1e6, 10, 1);
+    expect(angleBetween(direction, [1, 0])).toBeLessThan(90.1);
+    expect(Number.isFinite(tremor)).toBe(true);
+    expect(Math.hypot(...direction)).toBeCloseTo(1, 12);
+  });
 });
 
 it('two straight lines cross at the angle of the published case 7-06', () => {

@@ -42,11 +42,14 @@ describe.each(EXACT_NETS)('a line that was not traced, the count taken from the 
     expect(found?.at).not.toBeNull();
   });
 
-  it('marks the readings beside it, and no others', () => {
+  it('marks every reading, as the whole count is wrong, and those beside it as such', () => {
     const [beside, far] = readNet(without(2)).points;
     const codes = (point: typeof beside) => point!.findings.map(({ code }) => code);
     expect(codes(beside)).toContain('lineMissingBeside');
-    expect(codes(far)).not.toContain('lineMissingBeside');
+    expect(codes(far)).toContain('lineMissingElsewhere');
+    const [x, z] = places[1]!;
+    const off = Math.abs(far!.totalHead! - net.headAt(x, z)) * (net.drops / (net.headwater - net.outHead));
+    expect(off).toBeGreaterThan(0.1);
   });
 
   it('is not told of a whole net', () => {
