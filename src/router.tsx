@@ -49,6 +49,10 @@ const signedInPages: RouteObject[] = [
     '/dams/:damId/activity',
     async () => (await import('./pages/dam/dam-activity-page.tsx')).DamActivityPage,
   ),
+  page(
+    '/dams/:damId/seepage',
+    async () => (await import('./pages/dam-seepage/dam-seepage-page.tsx')).DamSeepagePage,
+  ),
   page('/drawings/:drawingId', async () => (await import('./pages/drawing/drawing-page.tsx')).DrawingPage),
   page('/nets/:netId', async () => (await import('./pages/desk/desk-page.tsx')).DeskPage),
   page('/revisions/:revisionId', async () => (await import('./pages/check/check-page.tsx')).CheckPage),

@@ -5,6 +5,7 @@ export const paths = {
   dam: (damId: string) => `/dams/${damId}`,
   damSettings: (damId: string) => `/dams/${damId}/settings`,
   damActivity: (damId: string) => `/dams/${damId}/activity`,
+  damSeepage: (damId: string) => `/dams/${damId}/seepage`,
   drawing: (drawingId: string, pageNumber?: number) =>
     pageNumber === undefined ? `/drawings/${drawingId}` : `/drawings/${drawingId}?sheet=${pageNumber}`,
   net: (netId: string) => `/nets/${netId}`,
