@@ -1,7 +1,7 @@
 import { exitsText } from '#client/text/exits.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { ExitReading } from '#shared/contract/reading-quantities.ts';
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import { PlainTable } from './plain-table.tsx';
 
@@ -49,7 +49,7 @@ export function ExitTable({
       fixedText(exit.elevation, decimals.elevation),
       fixedText(exit.headLost, decimals.head),
       fixedText(exit.length, 2),
-      fixedText(exit.cellGradient, 2),
+      plusMinusText(exit.cellGradient, exit.cellGradientPlusMinus, 2),
       exit.pointState === 'singular' ? text.singular : fixedText(exit.pointGradient, 2),
       fixedText(exit.criticalGradient, 2),
       fixedText(exit.factor, 1),

@@ -6,19 +6,23 @@ import type { Finding } from '#shared/contract/reading.ts';
 export function FormPane({
   title,
   onClose,
+  keepsFocus = false,
   children,
 }: {
   title: string;
   onClose: () => void;
+  /** Opens beside what has the focus and leaves it there, as when rows of a table are gone through. */
+  keepsFocus?: boolean;
   children: ReactNode;
 }) {
   const heading = useRef<HTMLHeadingElement>(null);
+  const takesFocus = useRef(!keepsFocus);
   // A pane opened from the title block is read from its head, and the next Tab is its first field. One that the sheet
   // or a field has opened leaves the focus there: Delete must still reach the line that was just chosen.
   useEffect(() => {
     const held = document.activeElement;
-    const elsewhere = held?.closest('[role="application"], table, input, select, textarea');
-    if (!elsewhere) heading.current?.focus({ preventScroll: true });
+    const elsewhere = held?.closest('[role="application"], input, select, textarea');
+    if (!elsewhere && takesFocus.current) heading.current?.focus({ preventScroll: true });
   }, []);
   return (
     <section aria-label={title} className="flex min-h-0 flex-1 flex-col">

@@ -1,7 +1,7 @@
 import { exitsText } from '#client/text/exits.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { HeaveReading } from '#shared/contract/reading-quantities.ts';
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { DECIMALS, unitNames } from '#shared/text/unit-text.ts';
 import { lineNameOf } from './line-names.ts';
 import { PlainTable } from './plain-table.tsx';
@@ -31,7 +31,7 @@ export function HeaveTable({
       lineNameOf(document, each.wall),
       fixedText(each.depth, 2),
       fixedText(each.width, 2),
-      fixedText(each.meanExcessHead, DECIMALS[document.unitSystem].head),
+      plusMinusText(each.meanExcessHead, each.meanExcessHeadPlusMinus, DECIMALS[document.unitSystem].head),
       fixedText(each.factor, 1),
       each.note,
     ],

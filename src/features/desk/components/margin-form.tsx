@@ -39,8 +39,8 @@ export type MarginForm =
   | { form: 'line'; lineId: string }
   | { form: 'soil'; soilId: string }
   | { form: 'measured'; pointId: string }
-  /** How a point is read. */
-  | { form: 'reading'; pointId: string };
+  /** How a point is read; `byChoice`: opened because the point was chosen, beside whatever is being done. */
+  | { form: 'reading'; pointId: string; byChoice?: boolean };
 
 interface MarginFormProps {
   open: MarginForm;
@@ -157,9 +157,10 @@ export function MarginFormPane({
     case 'reading':
       return (
         <ReadingPane
-          key={open.pointId}
+          key={`${open.pointId} ${open.byChoice === true}`}
           store={store}
           pointId={open.pointId}
+          keepsFocus={open.byChoice === true}
           onOpen={onOpen}
           onClose={onClose}
           onSheet={onSheet}

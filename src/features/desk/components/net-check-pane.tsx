@@ -16,6 +16,7 @@ import { FormPane } from './form-pane.tsx';
 import type { MarginForm } from './margin-form.tsx';
 import { Aside, MarginSection } from './margin-section.tsx';
 import { FigureCell, MarginTable, RowHead } from './margin-table.tsx';
+import { PhreaticCheck } from './phreatic-check.tsx';
 import { byWeight } from './title-block-cells.ts';
 
 interface NetCheckPaneProps {
@@ -37,6 +38,16 @@ export function NetCheckPane({ store, checks, onShow, onOpen, onClose, onSheet }
       {reading ? null : <p className="m-0 text-ink-2">{text.working}</p>}
       {reading && check ? (
         <Drawing reading={reading} check={check} store={store} checks={checks} onSheet={onSheet} />
+      ) : null}
+      {reading?.phreatic ? (
+        <PhreaticCheck
+          document={store.getState().document}
+          phreatic={reading.phreatic}
+          onShow={(at) => {
+            store.lookAt(at);
+            onSheet();
+          }}
+        />
       ) : null}
       {reading ? (
         <MarginSection title={text.found}>

@@ -44,7 +44,9 @@ export function PlainTable({
                 key={columns[i]!.head}
                 className={classNames(
                   'border-b border-rule-2 px-2 py-[3px]',
-                  columns[i]!.words ? 'text-left text-sm' : 'text-right whitespace-nowrap',
+                  columns[i]!.words
+                    ? 'min-w-24 text-left text-sm last:min-w-80'
+                    : 'text-right whitespace-nowrap',
                 )}
               >
                 {cell}

@@ -22,7 +22,7 @@ export function ProfileFields({ store, id, profile, profiles, onChoose }: Profil
   const { length } = unitNames(store.getState().document.unitSystem);
   const take = (edit: ProfileEdit) => store.run(edit.label, edit.ops);
   return (
-    <div className="sticky left-0 flex flex-wrap items-end gap-x-3 gap-y-2 px-2.5 pb-2 [&>div]:w-40">
+    <div className="sticky left-0 flex flex-wrap items-end gap-x-3 gap-y-2 px-2.5 pb-2 [&>div]:w-32 [&>div:last-of-type]:w-52">
       {profiles.length > 1 ? (
         <SelectField label={text.chosen} value={id} onChange={(event) => onChoose(event.target.value)}>
           {profiles.map((each) => (
@@ -47,7 +47,14 @@ export function ProfileFields({ store, id, profile, profiles, onChoose }: Profil
         onCommit={(use) => take(changeProfile(id, profile, { use }))}
       />
       <Figure
-        label={text.spacing(length)}
+        label={
+          <>
+            {text.spacing(length)}{' '}
+            <span className="font-normal text-ink-2">
+              {profile.place.on === 'grid' ? text.gridSpacingHint : text.spacingHint}
+            </span>
+          </>
+        }
         value={profile.spacing}
         optional
         positive
@@ -60,9 +67,6 @@ export function ProfileFields({ store, id, profile, profiles, onChoose }: Profil
           <SmallButton onClick={() => take(removeProfile(id, profile.name))}>{text.remove}</SmallButton>
         )}
       </span>
-      <p className="m-0 w-full text-sm text-ink-2">
-        {profile.place.on === 'grid' ? text.gridSpacingHint : text.spacingHint}
-      </p>
     </div>
   );
 }
@@ -73,5 +77,10 @@ function HideButton({ store }: { store: DeskStore }) {
   const hidden = kinds.includes('profile');
   const toggle = () =>
     store.setHidden(hidden ? kinds.filter((kind) => kind !== 'profile') : [...kinds, 'profile']);
-  return <SmallButton onClick={toggle}>{hidden ? text.show : text.hide}</SmallButton>;
+  return (
+    <SmallButton onClick={toggle}>
+      {hidden ? text.show : text.hide}
+      <span className="sr-only"> {text.onSheet}</span>
+    </SmallButton>
+  );
 }

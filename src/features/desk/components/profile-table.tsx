@@ -2,10 +2,11 @@ import { classNames } from '#client/components/class-names.ts';
 import { profileText as text } from '#client/text/profiles.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { ProfileReading, ProfileSample } from '#shared/contract/reading-quantities.ts';
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
 const CELL = 'border-b border-rule-2 px-2 py-[3px] whitespace-nowrap';
+const REMARK = 'min-w-60 border-b border-rule-2 px-2 py-[3px] text-sm';
 
 /** A profile place by place: above the phreatic line the pressure is 0 and flagged, what was not read has no figure. */
 export function ProfileTable({ document, read }: { document: FlowNetDocument; read: ProfileReading }) {
@@ -49,7 +50,7 @@ export function ProfileTable({ document, read }: { document: FlowNetDocument; re
                 {figure}
               </td>
             ))}
-            <td className={classNames(CELL, 'text-sm', lookOf(sample))}>{text.remarkOf(sample)}</td>
+            <td className={classNames(REMARK, lookOf(sample))}>{text.remarkOf(sample)}</td>
           </tr>
         ))}
       </tbody>
@@ -66,9 +67,9 @@ function figuresOf(sample: ProfileSample, unitSystem: FlowNetDocument['unitSyste
     fixedText(sample.distance, 2),
     fixedText(sample.offset, 2),
     fixedText(sample.elevation, decimals.elevation),
-    fixedText(sample.totalHead, decimals.head),
+    plusMinusText(sample.totalHead, sample.totalHeadPlusMinus, decimals.head),
     fixedText(sample.pressureHead, decimals.pressureHead),
-    fixedText(sample.porePressure, decimals.pressure),
+    plusMinusText(sample.porePressure, sample.porePressurePlusMinus, decimals.pressure),
     fixedText(sample.ru, 3),
   ];
 }

@@ -20,6 +20,7 @@ const APART_DROPS = 0.1;
 interface ReadingPaneProps {
   store: DeskStore;
   pointId: string;
+  keepsFocus: boolean;
   onOpen: (form: MarginForm) => void;
   onClose: () => void;
   /** Shows the sheet, where it is not beside the pane already. */
@@ -27,7 +28,7 @@ interface ReadingPaneProps {
 }
 
 /** How the figure of a point came about, in words and over the sheet, and how far it can be trusted. */
-export function ReadingPane({ store, pointId, onOpen, onClose, onSheet }: ReadingPaneProps) {
+export function ReadingPane({ store, pointId, keepsFocus, onOpen, onClose, onSheet }: ReadingPaneProps) {
   const document = useStore(store, (state) => state.document);
   const reading = useStore(store, (state) => state.reading);
   const readOnly = useStore(store, (state) => state.readOnly);
@@ -37,7 +38,7 @@ export function ReadingPane({ store, pointId, onOpen, onClose, onSheet }: Readin
   const ways = usePointWays(store, isCurrent && byHand !== null ? document : null, pointId);
   if (!point) return null;
   return (
-    <FormPane title={text.title(point.name)} onClose={onClose}>
+    <FormPane title={text.title(point.name)} onClose={onClose} keepsFocus={keepsFocus}>
       <Explanation point={point} />
       {point.sheetAt ? (
         <div>

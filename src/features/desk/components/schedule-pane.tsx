@@ -102,7 +102,7 @@ export function ScheduleState({ reading, failed }: { reading: NetReading | null;
 }
 
 /** A button beside the heading of a table below the sheet. */
-export function SmallButton({ onClick, children }: { onClick: () => void; children: string }) {
+export function SmallButton({ onClick, children }: { onClick: () => void; children: ReactNode }) {
   return (
     <button type="button" className={buttonClass('quiet', 'px-2 py-[2px] text-sm')} onClick={onClick}>
       {children}

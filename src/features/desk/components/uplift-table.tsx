@@ -1,7 +1,7 @@
 import { profileText } from '#client/text/profiles.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
 import type { ProfileReading } from '#shared/contract/reading-quantities.ts';
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { FigureCell, MarginTable, RowHead } from './margin-table.tsx';
 
@@ -21,7 +21,7 @@ export function UpliftTable({ uplift, unitSystem }: { uplift: Uplift; unitSystem
     text.arm(length),
   ];
   return (
-    <div className="sticky left-0 max-w-[52rem] px-2.5 pb-2">
+    <div className="sticky left-0 max-w-[56rem] px-2.5 pb-2 [&_tbody_th]:whitespace-nowrap">
       <h3 className="m-0 text-base font-semibold">{text.title}</h3>
       {uplift.total === null ? null : (
         <MarginTable caption={text.title} heads={heads}>
@@ -41,7 +41,7 @@ function Row({ name, part }: { name: string; part: NonNullable<Uplift['total']> 
   return (
     <tr>
       <RowHead>{name}</RowHead>
-      <FigureCell look="font-semibold">{fixedText(part.size, 1)}</FigureCell>
+      <FigureCell look="font-semibold">{plusMinusText(part.size, part.plusMinus, 1)}</FigureCell>
       <FigureCell>{fixedText(part.vertical, 1)}</FigureCell>
       <FigureCell>{fixedText(part.horizontal, 1)}</FigureCell>
       <FigureCell>{fixedText(part.actsAt?.[0] ?? null, 2)}</FigureCell>

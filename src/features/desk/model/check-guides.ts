@@ -1,6 +1,7 @@
 import { checkMarkText as text } from '#client/text/net-check.ts';
 import type { BesideSolution } from '#shared/compute/beside/beside-solution.ts';
-import { type PlacedDifference, STEPS } from '#shared/compute/beside/difference-picture.ts';
+import type { PlacedDifference } from '#shared/compute/beside/difference-picture.ts';
+import { STEPS } from '#shared/compute/beside/difference-steps.ts';
 import type { PointWays } from '#shared/compute/net/point-ways.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { NetCheckReading, NetFault } from '#shared/contract/reading-net-check.ts';

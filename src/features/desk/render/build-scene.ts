@@ -2,7 +2,13 @@ import { soilText } from '#client/text/desk-forms.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
 import type { LinearMap } from '#shared/compute/linear-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
-import type { DocumentEntity, FlowNetDocument, SheetPoint, TracedLine } from '#shared/contract/document.ts';
+import {
+  type DocumentEntity,
+  entitiesOf,
+  type FlowNetDocument,
+  type SheetPoint,
+  type TracedLine,
+} from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { fixedText, plainText } from '#shared/text/number-text.ts';
 import type { HideableKind } from '../model/desk-state.ts';
@@ -107,7 +113,9 @@ function lineItem({ id, value }: Shown, input: SceneInput): SceneLine[] {
 function profileItem({ id, value }: Shown, input: SceneInput): SceneItem[] {
   if (value.kind !== 'profile') return [];
   const { document, reading, map } = input;
-  return profileItems(id, value, { document, reading, map, chosen: isChosen(id, input) });
+  const chosen = isChosen(id, input);
+  const named = chosen || entitiesOf(document, 'profile').length === 1;
+  return profileItems(id, value, { document, reading, map, chosen, named });
 }
 
 function mark(

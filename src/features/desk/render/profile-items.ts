@@ -26,6 +26,8 @@ type About = {
   readonly reading: NetReading | null;
   readonly map: SectionMap | null;
   readonly chosen: boolean;
+  /** Whether its pressures are named: those of several profiles would hide one another. */
+  readonly named: boolean;
 };
 
 /** A profile on the sheet: its line, and the pore pressure along it as a diagram with its ends and maximum named. */
@@ -35,10 +37,11 @@ export function profileItems(id: string, value: Profile, about: About): SceneIte
   const look = value.finished ? AXIS : UNFINISHED;
   const axis: SceneItem = { id, shape: 'line', points, look, strong: about.chosen };
   const read = value.finished ? about.reading?.profiles.find((each) => each.id === id) : undefined;
-  return [...(read === undefined ? [] : diagramItems(id, read, about.document)), axis];
+  return [...(read === undefined ? [] : diagramItems(id, read, about)), axis];
 }
 
-function diagramItems(id: string, read: ProfileReading, { unitSystem }: FlowNetDocument): SceneItem[] {
+function diagramItems(id: string, read: ProfileReading, { document, named }: About): SceneItem[] {
+  const { unitSystem } = document;
   const diagram = diagramOf(read);
   if (diagram === null) return [];
   const { pressure: unit } = unitNames(unitSystem);
@@ -54,10 +57,10 @@ function diagramItems(id: string, read: ProfileReading, { unitSystem }: FlowNetD
     },
     ...line('ordinates', diagram.combs, ORDINATES),
     ...line('pressureCurve', diagram.curves, CURVE),
-    ...diagram.figures.map(({ at, pressure, most }, i): SceneItem => {
+    ...(named ? diagram.figures : []).map(({ at, pressure, most }, i): SceneItem => {
       const figure = fixedText(pressure, DECIMALS[unitSystem].pressure);
       const words = most ? text.mark.most(figure, unit) : figure;
-      const item = { id: `pressure ${id} ${i}`, shape: 'label', at, text: words, colour } as const;
+      const item = { id: `pressure ${id} ${i}`, shape: 'callout', at, text: words, colour } as const;
       return { ...item, strong: false, offsetPx: [0, 0] };
     }),
   ];

@@ -38,6 +38,7 @@ function readingPane(document: FlowNetDocument, change: (point: PointReading) =>
     createElement(ReadingPane, {
       store,
       pointId: points[0]!.id,
+      keepsFocus: false,
       onOpen: nothing,
       onClose: nothing,
       onSheet: nothing,

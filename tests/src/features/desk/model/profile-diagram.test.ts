@@ -14,8 +14,10 @@ function sample(at: SheetPoint, porePressure: number | null, distance: number | 
     reason: null,
     doubtful: null,
     totalHead: null,
+    totalHeadPlusMinus: null,
     pressureHead: null,
     porePressure,
+    porePressurePlusMinus: null,
     ru: null,
   };
 }

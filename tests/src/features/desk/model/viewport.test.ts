@@ -98,13 +98,13 @@ describe('a sheet seen through a map', () => {
     fc.assert(
       fc.property(map, fc.tuple(fc.nat(1200), fc.nat(800)), (seenAs, [x, y]) => {
         const seen = fitFrame({ ...view, seenAs }, [2000, 1000, 4000, 1000]);
-        for (const corner of [
+        for (const [cornerX, cornerY] of [
           [2000, 1000],
           [6000, 1000],
           [2000, 2000],
           [6000, 2000],
         ] as const) {
-          const [cx, cy] = toScreen(seen, sheetPx(...corner));
+          const [cx, cy] = toScreen(seen, sheetPx(cornerX, cornerY));
           expect(Math.min(cx, cy, view.widthPx - cx, view.heightPx - cy)).toBeGreaterThan(0);
         }
         const pointer = screenPx(x, y);

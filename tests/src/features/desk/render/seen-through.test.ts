@@ -2,10 +2,9 @@ import { describe, expect, it } from 'vitest';
 import { sectionViews } from '#client/features/desk/model/section-views.ts';
 import type { SceneItem } from '#client/features/desk/render/scene.ts';
 import { itemsThrough } from '#client/features/desk/render/seen-through.ts';
-import type { LinearMap } from '#shared/compute/linear-map.ts';
 import type { FrameReading } from '#shared/contract/reading-frame.ts';
 
-const third: LinearMap = [1 / 3, 0, 0, 1];
+const third: [number, number, number, number] = [1 / 3, 0, 0, 1];
 const look = { colour: '#000', widthPx: 2, dashPx: [], end: 'none', hatchPx: 0 } as const;
 const line: SceneItem = {
   id: 'a',
