@@ -1,9 +1,7 @@
 import type { Polyline } from '#shared/compute/geometry/polyline.ts';
-import { lengthOf, pointAlong } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { linesOfKind, medianLength } from '#shared/compute/net/net-lines.ts';
 import type { NetModel } from '#shared/compute/net/net-model.ts';
-import type { Strip } from '#shared/compute/net/strips.ts';
 import type { SingleInputs } from '#shared/compute/single-inputs.ts';
 import { type InterfaceCrossing, interfaceCrossings } from '#shared/compute/soils/interface-crossings.ts';
 import {
@@ -17,6 +15,7 @@ import {
 } from '#shared/compute/soils/soil-list.ts';
 import { questionSoilList, questionUsedSoils } from '#shared/compute/soils/soil-questions.ts';
 import { soilRegionsOf } from '#shared/compute/soils/soil-regions.ts';
+import { usedSoils } from '#shared/compute/soils/used-soils.ts';
 import type { WorkingFrame } from '#shared/compute/working-frame.ts';
 import type { EntityOf, FlowNetDocument } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
@@ -39,8 +38,6 @@ export type SoilGround = {
 /** Lines tell their direction on either side of an interface by this part of a usual equipotential. */
 const WINDOW_PART = 0.25;
 const LEAST_WINDOW_PX = 80;
-/** Part of the sampled net that the soil of the section must fill to be counted as one of the net's soils. */
-const LEAST_PART = 0.02;
 
 /**
  * The soils under a net put in order. `document` with its traces in working pixels; `impliedRatio` kh/kv of a section
@@ -55,7 +52,7 @@ export function soilGroundOf(
 ): SoilGround {
   const list = soilsOf(document, inputs.permeability, impliedRatio);
   const regions = soilRegionsOf(model.lines, list, model.reach, frame.map.up);
-  const used = usedSoils(model.strips, regions.soilAt, list);
+  const used = usedSoils(model.strips, regions, list);
   const { countedIn, cellRatio } = inputs.count;
   const named = countedSoil(list, countedIn);
   const counted = named !== null && (used.length === 0 || used.includes(named)) ? named : null;
@@ -111,36 +108,6 @@ function countedPermeability(
   const { value, kh, kv } = counted;
   const ratio = kh === null || kv === null ? 1 : kv / kh;
   return { ...value, kind: 'permeability', kv: value.k === null || ratio === 1 ? null : value.k * ratio };
-}
-
-/** Soils that lie within the net, those of its section first. */
-function usedSoils(
-  strips: readonly Strip[],
-  soilAt: SoilGround['soilAt'],
-  { section, placed }: SoilList,
-): Soil[] {
-  if (placed.length === 0) return [section];
-  const places = strips.flatMap(placesWithin);
-  const counts = new Map<Soil, number>();
-  for (const [x, y] of places) {
-    const soil = soilAt(x, y);
-    counts.set(soil, (counts.get(soil) ?? 0) + 1);
-  }
-  return [section, ...placed].filter((soil) => {
-    const count = counts.get(soil) ?? 0;
-    return soil === section ? count > LEAST_PART * places.length : count > 0;
-  });
-}
-
-/** Places spread over a strip. */
-function placesWithin({ beforeShape, afterShape }: Strip): Pair[] {
-  return Array.from({ length: 24 }, (_, i): Pair => {
-    const along = ((i >> 2) + 0.5) / 6;
-    const across = ((i & 3) + 0.5) / 4;
-    const [ax, ay] = pointAlong(beforeShape, along * lengthOf(beforeShape));
-    const [bx, by] = pointAlong(afterShape, along * lengthOf(afterShape));
-    return [ax + across * (bx - ax), ay + across * (by - ay)];
-  });
 }
 
 /** Null where one permeability without direction holds all over, in which case heads do not depend on it. */

@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { flatApronNet } from '#shared/compute/exact/flat-apron-net.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { similarityBackward } from '#shared/compute/similarity.ts';
-import { type EntityOf, type FlowNetDocument, UNSAID } from '#shared/contract/document.ts';
+import { type EntityOf, type FlowNetDocument, type SheetPoint, UNSAID } from '#shared/contract/document.ts';
 import { type NetReading, netReading } from '#shared/contract/reading.ts';
 import { changed, withAdded } from '#tests/support/exact-nets/edit-net.ts';
 import {
@@ -111,6 +111,52 @@ describe('a zoned strip in series (Darcy 1856)', () => {
     expect(codesOf(reading)).toContain('noCommonTransform');
     expect(reading.frame!.kind).toBe('none');
     expect(worstInDrops(reading, net.headAt)).toBeLessThan(0.003);
+  });
+});
+
+describe('a thin wall of tight soil within one drop (Darcy 1856)', () => {
+  // A slurry wall of 0.6 m in 60 m of sand a hundred times as permeable: it takes half of the head.
+  const [from, to, end] = [30, 30.6, 60];
+  const resistance = (offset: number) => offset + 99 * Math.max(0, Math.min(offset, to) - from);
+  const headAt = (offset: number) => 110 - (6 * resistance(offset)) / resistance(end);
+  const net = seriesStripNet({
+    lengths: [from, end - from],
+    permeabilities: [4e-6, 4e-6],
+    thickness: 10,
+    headwater: 110,
+    tailwater: 104,
+    drops: 1,
+    top: 100,
+  });
+  const tracing: Tracing = {
+    pxPerUnit: 60,
+    readings: [5, 20, 29, 32, 45, 58].map((offset) => ({ at: [offset, 93] as const, clicked: true })),
+  };
+  const onSheet = (offset: number, elevation: number): SheetPoint => {
+    const [x, y] = similarityBackward(sheetMapOf(net, tracing), offset, elevation);
+    return [x, y];
+  };
+  const sand = changed(exactNetDocument(net, tracing), 'permeability', (value) => ({ ...value, k: 4e-6 }));
+  const otherSide = Object.values(sand.entities).flatMap(({ value }) =>
+    value.kind === 'line' && value.line === 'soilBoundary'
+      ? [{ ...value, points: [onSheet(to, 100), onSheet(to, 90)] }]
+      : [],
+  )[0]!;
+  const wall: EntityOf<'soil'> = {
+    kind: 'soil',
+    ...UNSAID.soil,
+    name: 'the slurry wall',
+    places: [onSheet((from + to) / 2, 95)],
+    k: 4e-8,
+    unit: 'm/s',
+    factor: null,
+    source: '',
+  };
+
+  it('parts the head as its resistance does', () => {
+    const reading = readNet(withAdded(withAdded(sand, otherSide), wall));
+    expect(codesOf(reading)).not.toContain('soilOutsideNet');
+    expect(worstInDrops(reading, headAt)).toBeLessThan(0.005);
   });
 });
 
