@@ -16,8 +16,11 @@ import { EXACT_NETS } from './exact-nets/exact-nets.ts';
 import type { TestApp } from './test-app.ts';
 import { addDam, addMember, type TestPerson } from './test-people.ts';
 
+/** What a net is made with: the database and somebody signed in, of a test's own application or of a real server. */
+type Makers = Pick<TestApp, 'db' | 'signIn'>;
+
 /** A drawing with one rendered sheet, as if it had been uploaded. */
-export async function addSheet(app: TestApp, damId: string, uploadedBy: string): Promise<string> {
+export async function addSheet(app: Pick<Makers, 'db'>, damId: string, uploadedBy: string): Promise<string> {
   const drawingId = uuidv7();
   const sheetId = uuidv7();
   await app.db.getRepository(DrawingEntity).insert({
@@ -57,7 +60,7 @@ export interface NetPlaceFixture {
 }
 
 /** A dam with an engineer, a sheet, Section B–B and an empty net, made through the API. */
-export async function addNet(app: TestApp, engineerName = 'Iris Marsh'): Promise<NetPlaceFixture> {
+export async function addNet(app: Makers, engineerName = 'Iris Marsh'): Promise<NetPlaceFixture> {
   const { person: engineer, caller } = await app.signIn(engineerName);
   const damId = await addDam(app.db, engineer.id);
   await addMember(app.db, damId, engineer.id, 'engineer');
@@ -149,7 +152,7 @@ export function tangledDocument(): FlowNetDocument {
 }
 
 /** A dam with a finished net. */
-export async function addFinishedNet(app: TestApp, engineerName?: string): Promise<NetPlaceFixture> {
+export async function addFinishedNet(app: Makers, engineerName?: string): Promise<NetPlaceFixture> {
   const place = await addNet(app, engineerName);
   await fillNet(place.caller, place.netId, finishedDocument());
   return place;
