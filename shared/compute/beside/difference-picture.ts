@@ -1,3 +1,4 @@
+import { STEPS } from '#shared/compute/beside/difference-steps.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import type { SectionSolution } from '#shared/compute/independent/section-solution.ts';
 import { solutionReader } from '#shared/compute/independent/solution-reader.ts';
@@ -27,9 +28,6 @@ export type DifferencePicture = {
   /** Places compared. */
   readonly compared: number;
 };
-
-/** Parts of the head lost at which the tint changes: a tenth, a quarter and half of a drop where there are ten. */
-export const STEPS = [0.01, 0.025, 0.05] as const;
 
 const SQUARES = 2400;
 const LEAST_SQUARE_PX = 6;

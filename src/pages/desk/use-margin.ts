@@ -95,7 +95,7 @@ function formFor(state: DeskState, before: DeskState): MarginForm | null {
   if (id === null || id === chosen(before)) return null;
   if (state.selection.kind === 'line') return { form: 'line', lineId: id };
   // While points are being placed one after the other nothing opens.
-  return state.tool === 'readingPoint' ? null : { form: 'reading', pointId: id };
+  return state.tool === 'readingPoint' ? null : { form: 'reading', pointId: id, byChoice: true };
 }
 
 /** The one line or reading point that is chosen. */

@@ -49,6 +49,11 @@ describe('a net that is looked into', () => {
     await row.getByRole('button', { name: /^How counted/ }).click();
     const reading = pane(/^How .+ is read$/);
     await reading.getByText('On the sheet: the strip between the two lines').waitFor();
+    // Going through the rows by keyboard is not interrupted; asking for it leads there.
+    const held = () => page.evaluate(() => document.activeElement?.textContent ?? '');
+    expect(await held()).not.toMatch(/^How .+ is read$/);
+    await page.getByRole('button', { name: 'Show on the sheet' }).click();
+    await expect.poll(held).toMatch(/^How .+ is read$/);
     await reading.getByRole('row', { name: /^The field, which is the figure/ }).waitFor();
     await reading.getByRole('button', { name: 'Change: Tracing of the lines' }).first().click();
     await pane('Count of drops and channels').waitFor();
@@ -88,6 +93,18 @@ describe('a net that is looked into', () => {
     await beside.getByText(/^Out of date/).waitFor();
   });
 
+  it('tells what the seepage is made of and what its factor hangs on', async () => {
+    await cell(page, 'Seepage').click();
+    const seepage = pane('What the seepage is made of');
+    await seepage.getByRole('row', { name: /^Channels Nf/ }).waitFor();
+    await seepage.getByRole('button', { name: 'Change: Permeability k' }).click();
+    const factor = pane('Permeability').getByLabel(/^Known within a factor/);
+    await factor.fill('3');
+    await factor.press('Tab');
+    await cell(page, 'Seepage').click();
+    await seepage.getByText(/^×\/÷ 3/).waitFor();
+  });
+
   it('shows the same on a phone, pane by pane', async () => {
     await page.setViewportSize(PHONE);
     await page.getByRole('button', { name: 'Schedule', exact: true }).click();
@@ -96,9 +113,10 @@ describe('a net that is looked into', () => {
       .first()
       .click();
     await page.getByRole('button', { name: 'Show on the sheet' }).click();
-    await pane(/^How .+ is read$/)
-      .getByText('On the sheet: the strip')
-      .waitFor();
+    const reading = pane(/^How .+ is read$/);
+    await reading.getByText('On the sheet: the strip').waitFor();
+    await reading.getByRole('button', { name: 'Go to the point' }).click();
+    await page.getByRole('button', { name: 'Sheet', exact: true, pressed: true }).waitFor();
     world.browser.checkConsole();
   });
 });

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { type BesideSolution, besideSolution } from '#shared/compute/beside/beside-solution.ts';
-import { STEPS } from '#shared/compute/beside/difference-picture.ts';
+import { STEPS } from '#shared/compute/beside/difference-steps.ts';
 import { sectionOfDocument } from '#shared/compute/independent/section-of-document.ts';
 import { type SolveOptions, solveSection } from '#shared/compute/independent/solve-section.ts';
 import { readNet } from '#shared/compute/read-net.ts';
