@@ -30,6 +30,30 @@ export function soilOfCell({ measures }: NetCell, facts: CellFacts): number | 'u
   return others.every((other) => other !== null && Math.abs(other / k - 1) <= SAME_SOIL) ? k : 'several';
 }
 
+/** Places at which the soil is asked for on each piece of a line. */
+const ASKED = 4;
+
+/**
+ * Permeability along a line through soils one after another, over that of the counted soil: ℓ/∫ds/k, the harmonic mean
+ * by length (Darcy 1856, in series). `path` in working pixels; null where a soil or its permeability is not known.
+ */
+export function seriesK(path: readonly Pair[], facts: CellFacts): number | null {
+  let length = 0;
+  let resistance = 0;
+  for (let i = 1; i < path.length; i += 1) {
+    const [[fromX, fromY], [toX, toY]] = [path[i - 1]!, path[i]!];
+    const part = Math.hypot(toX - fromX, toY - fromY) / ASKED;
+    for (let j = 0; j < ASKED; j += 1) {
+      const t = (j + 0.5) / ASKED;
+      const k = facts.relativeK([fromX + t * (toX - fromX), fromY + t * (toY - fromY)]);
+      if (k === null || !(k > 0)) return null;
+      length += part;
+      resistance += part / k;
+    }
+  }
+  return resistance > 0 ? length / resistance : null;
+}
+
 /**
  * Flow through a cell for each drop of head and unit permeability of the counted soil: (k/kc)·ΔNd·B/L, dimensionless.
  * In a net of equal channels it is one number for all cells, squares or not, part drops and other soils included (flow

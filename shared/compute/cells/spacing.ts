@@ -1,6 +1,12 @@
 import type { NetCell, NetCells } from '#shared/compute/cells/cells.ts';
 import { channelsOf } from '#shared/compute/cells/channels.ts';
-import { type CellFacts, cellFlow, commonRatioOf, middleValue } from '#shared/compute/cells/common-ratio.ts';
+import {
+  type CellFacts,
+  cellFlow,
+  commonRatioOf,
+  middleValue,
+  seriesK,
+} from '#shared/compute/cells/common-ratio.ts';
 import { cellsByStrip } from '#shared/compute/cells/grouped.ts';
 import { measureCell } from '#shared/compute/cells/quadrilateral.ts';
 import type { StripRails } from '#shared/compute/cells/rails.ts';
@@ -48,7 +54,7 @@ function amongCells(cells: readonly NetCell[], entered: number, facts: CellFacts
       judgedBy,
     );
   const long = cellsByStrip(cells).flatMap((members): MissingLine[] => {
-    const middle = middleOf(members);
+    const middle = middleOf(members) ?? middleThroughSoils(members, judgedBy, facts);
     if (middle === null || judgedBy / middle < MISSING_FACTOR) return [];
     const { before, after } = members[0]!;
     return [
@@ -62,6 +68,20 @@ function amongCells(cells: readonly NetCell[], entered: number, facts: CellFacts
     return [{ kind: 'flowLine', between, factor: middle / judgedBy, at: placeIn(members) }];
   });
   return [...long, ...wide];
+}
+
+/** Where every cell of a strip lies in more than one soil: their middle flow with the soils one after another. */
+function middleThroughSoils(members: readonly NetCell[], judgedBy: number, facts: CellFacts): number | null {
+  const flows = members
+    .filter(({ notJudged }) => notJudged === null)
+    .map((cell) => {
+      const k = seriesK(cell.measures.along, facts);
+      return k === null ? 0 : k * facts.dropsBetween(cell.before, cell.after) * cell.ratio;
+    });
+  return middleValue(
+    flows.filter((flow) => Number.isFinite(flow) && flow > 0),
+    judgedBy,
+  );
 }
 
 function placeIn(cells: readonly NetCell[]): Pair {
@@ -90,7 +110,7 @@ function amongStrips(model: NetModel, rails: readonly StripRails[], facts: CellF
   });
 }
 
-/** Flow through a whole strip for each drop and unit permeability: the sum of B/L over columns side by side. */
+/** Flow through a whole strip for each drop and unit permeability: the sum of k·B/L over columns side by side. */
 function flowThrough(strip: Strip, facts: CellFacts): number | null {
   const drops = facts.dropsBetween(strip.before, strip.after);
   const lengths = [lengthOf(strip.beforeShape), lengthOf(strip.afterShape)] as const;
@@ -99,13 +119,13 @@ function flowThrough(strip: Strip, facts: CellFacts): number | null {
     const [from, to] = [i / COLUMNS, (i + 1) / COLUMNS];
     const before = pieceOf(strip.beforeShape, from * lengths[0], to * lengths[0]);
     const after = pieceOf(strip.afterShape, from * lengths[1], to * lengths[1]);
-    const { length, width, middle } = measureCell({
+    const { length, width, along } = measureCell({
       before,
       after,
       left: [before[0]!, after[0]!],
       right: [before[before.length - 1]!, after[after.length - 1]!],
     });
-    const k = facts.relativeK(middle);
+    const k = seriesK(along, facts);
     if (k === null || !(length > 0)) return null;
     sum += (k * drops * width) / length;
   }

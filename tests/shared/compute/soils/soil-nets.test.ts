@@ -5,7 +5,7 @@ import { readNet } from '#shared/compute/read-net.ts';
 import { similarityBackward } from '#shared/compute/similarity.ts';
 import { type EntityOf, type FlowNetDocument, type SheetPoint, UNSAID } from '#shared/contract/document.ts';
 import { type NetReading, netReading } from '#shared/contract/reading.ts';
-import { changed, withAdded } from '#tests/support/exact-nets/edit-net.ts';
+import { changed, withAdded, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import {
   entityIdOf,
   exactNetDocument,
@@ -98,6 +98,35 @@ describe('a zoned strip in series (Darcy 1856)', () => {
     expect(codesOf(readNet(gone))).toContain('countedSoilUnknown');
     expect(readNet(gone).quantities.seepage).toBeNull();
   });
+
+  it.each([false, true])(
+    'is asked about an equipotential left out, by a spacing that knows the soils, and about none of a whole net (flow line: %s)',
+    (hasFlowLine) => {
+      const tracing = { pxPerUnit: 60, readings };
+      const at = (offset: number): SheetPoint => {
+        const [x, y] = similarityBackward(sheetMapOf(net, tracing), offset, 95);
+        return [x, y];
+      };
+      const base = zoned(tracing);
+      const line = Object.values(base.entities).flatMap(({ value }) =>
+        value.kind === 'line' && value.line === 'equipotential' ? [value] : [],
+      )[0]!;
+      const points = Array.from({ length: 61 }, (_, i) => at(i));
+      const withFlow = changed(
+        withAdded(base, { ...line, line: 'flowLine', points }),
+        'netCount',
+        (value) => ({ ...value, channels: 2, cellRatio: 5 / 24 }),
+      );
+      const whole = hasFlowLine ? withFlow : base;
+      expect(codesOf(readNet(whole))).not.toContain('lineMissing');
+      const without = withLines(whole, 'equipotential', (value, i) => (i === 1 ? null : value));
+      const reading = readNet(changed(without, 'netCount', (value) => ({ ...value, drops: 4 })));
+      expect(codesOf(reading)).toContain('lineMissing');
+      expect(
+        reading.points.every(({ findings }) => findings.some(({ code }) => code.startsWith('lineMissing'))),
+      ).toBe(true);
+    },
+  );
 
   it('gives no figure while a soil has no permeability', () => {
     const reading = readNet(zoned({ pxPerUnit: 60, readings }, { k: null }));
