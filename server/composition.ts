@@ -5,6 +5,7 @@ import type { AppConfig } from './config/config.ts';
 import { createDataSource } from './entities/data-source.ts';
 import { systemClock } from './http/clock.ts';
 import { createRenderProcess } from './imaging/render-process.ts';
+import { createCalculationSheetHandler } from './jobs/handlers/make-calculation-sheet.ts';
 import { createRenderDrawingHandler } from './jobs/handlers/render-drawing.ts';
 import { createSendMailHandler } from './jobs/handlers/send-mail.ts';
 import type { JobHandlers } from './jobs/jobs-port.ts';
@@ -13,6 +14,7 @@ import { createPgLive } from './live/pg-live.ts';
 import type { MailerPort } from './mail/mailer-port.ts';
 import { createOutboxFolderMailer } from './mail/outbox-folder-mailer.ts';
 import { createSmtpMailer } from './mail/smtp-mailer.ts';
+import { requeueCalculationSheets } from './services/calculation-sheet-service.ts';
 import { requeueWaitingMails } from './services/mail-delivery.ts';
 import { requeueRenderJobs } from './services/render-job-service.ts';
 import { readingDeps } from './services/service-deps.ts';
@@ -47,6 +49,7 @@ export async function compose(config: AppConfig, logger: Logger): Promise<Produc
       // What waited or was under way when the last process ended is taken up again.
       await requeueRenderJobs(readingDeps(deps));
       await requeueWaitingMails(deps);
+      await requeueCalculationSheets(readingDeps(deps));
     },
     async stop(graceMs) {
       await jobs.stop(graceMs);
@@ -72,6 +75,7 @@ function jobHandlers(deps: AppDeps, mailer: MailerPort): JobHandlers {
   const { smtpUrl, production } = deps.config;
   return {
     'render-drawing': createRenderDrawingHandler(deps, () => createRenderProcess()),
+    'make-calculation-sheet': createCalculationSheetHandler(deps),
     // Where mails are read on a page of ours their links have to stay.
     'send-mail': createSendMailHandler({ ...deps, mailer, forgetLinks: smtpUrl !== null || production }),
   };

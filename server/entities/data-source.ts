@@ -1,6 +1,7 @@
 import 'reflect-metadata';
 import { DataSource } from 'typeorm';
 import { migrations } from '#server/migrations/index.ts';
+import { CalculationSheetEntity } from './calculation-sheet-entity.ts';
 import { DamEntity, EventEntity, MembershipEntity } from './dam-entity.ts';
 import { DrawingEntity, RenderJobEntity, SheetEntity } from './drawing-entity.ts';
 import { ArtifactEntity, DecisionEntity, RevisionEntity } from './ledger-entity.ts';
@@ -30,6 +31,7 @@ export const entities = [
   RevisionEntity,
   DecisionEntity,
   ArtifactEntity,
+  CalculationSheetEntity,
   OutboxMailEntity,
 ];
 

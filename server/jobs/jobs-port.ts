@@ -6,6 +6,8 @@ export interface JobIds {
   'render-drawing': string;
   /** Row of `outbox_mail`. */
   'send-mail': string;
+  /** Row of `calculation_sheet`. */
+  'make-calculation-sheet': string;
 }
 export type JobName = keyof JobIds;
 /** Does the work of one row; idempotent, and stops soon after `signal` aborts. */

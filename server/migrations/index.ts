@@ -10,6 +10,7 @@ import { NetCopiedFrom1796126400009 } from './1796126400009-net-copied-from.ts';
 import { RevisionChangeNumber1796126400010 } from './1796126400010-revision-change-number.ts';
 import { SignInFailures1796126400011 } from './1796126400011-sign-in-failures.ts';
 import { DocumentVersion21796126400013 } from './1796126400013-document-version-2.ts';
+import { CalculationSheets1796126400060 } from './1796126400060-calculation-sheets.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -25,4 +26,5 @@ export const migrations = [
   RevisionChangeNumber1796126400010,
   SignInFailures1796126400011,
   DocumentVersion21796126400013,
+  CalculationSheets1796126400060,
 ];

@@ -1,4 +1,5 @@
 import type { RouteRecord } from '#server/http/route-record.ts';
+import { calculationSheetRoutes } from './calculation-sheet-routes.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
 import { damSeepageRoutes } from './dam-seepage-routes.ts';
@@ -32,4 +33,5 @@ export const routes: readonly RouteRecord[] = [
   ...scheduleRoutes,
   ...noteRoutes,
   ...revisionRoutes,
+  ...calculationSheetRoutes,
 ];

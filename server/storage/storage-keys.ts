@@ -26,6 +26,10 @@ export function originalKey(sha256: string): string {
   return checkedKey(`sha256/${sha256}`);
 }
 
+export function artifactKey(sha256: string): string {
+  return checkedKey(`artifacts/${sha256}`);
+}
+
 export function tilePrefix(sheetId: string, rendition: string): string {
   return checkedTilePrefix(`sheets/${sheetId}/${rendition}`);
 }

@@ -23,6 +23,7 @@ const start = async () => {
   await jobs.start({
     'render-drawing': createRenderDrawingHandler(app.deps),
     'send-mail': async () => undefined,
+    'make-calculation-sheet': async () => undefined,
   });
 };
 

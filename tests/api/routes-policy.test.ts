@@ -130,7 +130,10 @@ async function furnish(netId: string, sheetId: string): Promise<Record<string, s
     mkdirSync(path.dirname(file), { recursive: true });
     writeFileSync(file, 'bytes');
   }
-  return { noteId, revisionId, mailId, drawingId: drawing.id };
+  const calculationSheetId = uuidv7();
+  const asked = { id: calculationSheetId, revisionId, paper: 'A4', jobNumber: '' };
+  await callers.colleague.post(`/nets/${netId}/calculation-sheets`, asked).expect(202);
+  return { noteId, revisionId, mailId, calculationSheetId, drawingId: drawing.id };
 }
 
 interface Answer {

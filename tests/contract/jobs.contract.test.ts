@@ -37,7 +37,11 @@ describe.each(adapters)('background work in %s', (_name, create) => {
     return jobs;
   }
   const nothing: JobHandler = async () => {};
-  const handlersWith = (send: JobHandler): JobHandlers => ({ 'render-drawing': nothing, 'send-mail': send });
+  const handlersWith = (send: JobHandler): JobHandlers => ({
+    'render-drawing': nothing,
+    'send-mail': send,
+    'make-calculation-sheet': nothing,
+  });
   const rowId = () => crypto.randomUUID();
   const until = async (isTrue: () => boolean) => {
     const end = Date.now() + 15_000;
@@ -147,7 +151,11 @@ describe.each(adapters)('background work in %s', (_name, create) => {
     const note = (name: string) => async () => {
       ran.push(name);
     };
-    await jobs.start({ 'render-drawing': note('render'), 'send-mail': note('mail') });
+    await jobs.start({
+      'render-drawing': note('render'),
+      'send-mail': note('mail'),
+      'make-calculation-sheet': note('sheet'),
+    });
     await jobs.enqueue(db.manager, 'render-drawing', rowId());
     await until(() => ran.length > 0);
     expect(ran).toEqual(['render']);
@@ -199,6 +207,7 @@ describe('the queue in PostgreSQL', () => {
     const ran: string[] = [];
     await later.start({
       'render-drawing': async () => {},
+      'make-calculation-sheet': async () => {},
       'send-mail': async (id) => {
         ran.push(id);
       },

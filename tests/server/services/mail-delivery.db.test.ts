@@ -161,7 +161,11 @@ describe('the worker and a real mail server', () => {
     jobs = createPgBossJobs({ url: app.database.appUrl, logger });
     const mailer = createSmtpMailer({ smtpUrl, from: 'Tracehead <tracehead@harrow-fen.example>' });
     const deps = { db: app.db, jobs, mailer, clock: { now: () => new Date() }, forgetLinks: false };
-    await jobs.start({ 'render-drawing': async () => {}, 'send-mail': createSendMailHandler(deps) });
+    await jobs.start({
+      'render-drawing': async () => {},
+      'send-mail': createSendMailHandler(deps),
+      'make-calculation-sheet': async () => {},
+    });
   }
   const writeReal = () =>
     inTransaction({ ...app.deps, jobs, clock: { now: () => new Date() } }, (tx) =>
