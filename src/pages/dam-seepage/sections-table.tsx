@@ -1,4 +1,4 @@
-import type { ReactNode } from 'react';
+import { Fragment, type ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import { SelectField } from '#client/components/field.tsx';
 import { Cell, HeadCell, Table } from '#client/components/table.tsx';
@@ -6,7 +6,7 @@ import { paths } from '#client/lib/paths.ts';
 import { damSeepageText as text } from '#client/text/dam-seepage.ts';
 import type { FlowUnit } from '#shared/compute/quantities/seepage-volume.ts';
 import { metresPerLengthUnit } from '#shared/compute/units.ts';
-import type { DamSeepageDto } from '#shared/contract/dam-seepage.ts';
+import type { ChosenNet, DamSeepageDto } from '#shared/contract/dam-seepage.ts';
 import { fixedText, NO_FIGURE } from '#shared/text/number-text.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
@@ -42,21 +42,23 @@ export function SectionsTable({ found, netIds, unit, isWorkingOut, onChoose }: S
           <HeadCell numeric>{heads.tailwater}</HeadCell>
           <HeadCell numeric>{heads.flow}</HeadCell>
           <HeadCell numeric>{text.factor}</HeadCell>
-          <HeadCell className="w-full">{text.remark}</HeadCell>
         </tr>
       </thead>
       <tbody>
         {sectionRows(found, netIds).map((row) => (
-          <tr key={row.id}>
-            <Cell className="whitespace-nowrap">
-              <SectionName row={row} />
-            </Cell>
-            <Figure head={heads.chainage}>{row.chainage || text.noChainage}</Figure>
-            <Cell className="min-w-44">
-              <NetPicker row={row} onChoose={(netId) => onChoose(row, netId)} />
-            </Cell>
-            <NetFigures row={row} found={found} unit={unit} heads={heads} isWorkingOut={isWorkingOut} />
-          </tr>
+          <Fragment key={row.id}>
+            <tr>
+              <Cell className="whitespace-nowrap">
+                <SectionName row={row} />
+              </Cell>
+              <Figure head={heads.chainage}>{row.chainage || text.noChainage}</Figure>
+              <Cell className="min-w-44">
+                <NetPicker row={row} onChoose={(netId) => onChoose(row, netId)} />
+              </Cell>
+              <NetFigures row={row} found={found} unit={unit} heads={heads} isWorkingOut={isWorkingOut} />
+            </tr>
+            {isWorkingOut ? null : <RemarkRow chosen={row.chosen} />}
+          </Fragment>
         ))}
       </tbody>
     </Table>
@@ -95,6 +97,10 @@ function NetPicker({ row, onChoose }: { row: SectionRow; onChoose: (netId: strin
   );
 }
 
+/** Headwater, tailwater, seepage and factor. */
+const FIGURE_COLUMNS = 4;
+const COLUMNS = 3 + FIGURE_COLUMNS;
+
 interface NetFiguresProps {
   row: SectionRow;
   found: DamSeepageDto;
@@ -104,15 +110,15 @@ interface NetFiguresProps {
 }
 
 function NetFigures({ row: { netId, chosen }, found, unit, heads, isWorkingOut }: NetFiguresProps) {
-  if (netId === null) return <Cell colSpan={5} className="max-sm:hidden" />;
+  if (netId === null) return <Cell colSpan={FIGURE_COLUMNS} className="max-sm:hidden" />;
   if (isWorkingOut || chosen === null)
     return (
-      <Cell colSpan={5} className="text-ink-2">
+      <Cell colSpan={FIGURE_COLUMNS} className="text-ink-2">
         {text.workingOut}
       </Cell>
     );
   const metres = metresPerLengthUnit(found.unitSystem);
-  const { headwater, tailwater, seepage, factor, figures, leftOut, tracedOnly } = chosen;
+  const { headwater, tailwater, seepage, factor, figures } = chosen;
   const level = (value: number | null) => fixedText(value === null ? null : value / metres, 2);
   return (
     <>
@@ -122,11 +128,20 @@ function NetFigures({ row: { netId, chosen }, found, unit, heads, isWorkingOut }
         {seepage === null ? NO_FIGURE : <FlowFigure flow={seepage * metres} figures={figures} unit={unit} />}
       </Figure>
       <Figure head={text.factor}>{fixedText(factor, 1)}</Figure>
-      <Cell className="text-sm text-attention">
-        {leftOut ? text.leftOut(leftOut.text) : null}
-        {leftOut === null && tracedOnly ? text.tracedOnly : null}
-      </Cell>
     </>
+  );
+}
+
+/** Why the net above is no part of the total, or only a part of its flow; nothing when it is all in. */
+function RemarkRow({ chosen }: { chosen: ChosenNet | null }) {
+  if (chosen === null || (chosen.leftOut === null && !chosen.tracedOnly)) return null;
+  return (
+    <tr>
+      <Cell colSpan={COLUMNS} className="bg-doubt text-sm text-attention">
+        {chosen.leftOut ? text.leftOut(chosen.leftOut.text) : text.tracedOnly}{' '}
+        <Link to={paths.net(chosen.netId)}>{text.openNet}</Link>
+      </Cell>
+    </tr>
   );
 }
 
