@@ -60,7 +60,9 @@ describe('a net that is looked into', () => {
   });
 
   it('says in the title block what is poor, lists it by effect and goes there', async () => {
-    await expect.poll(() => cell(page, 'Net check').textContent()).toMatch(/\d+ cells not square/);
+    await expect
+      .poll(() => cell(page, 'Net check').textContent(), { timeout: 15_000 })
+      .toMatch(/\d+ cells not square/);
     await cell(page, 'Net check').click();
     const check = pane('Net check');
     await check.getByLabel('Show on the sheet').check();

@@ -54,8 +54,8 @@ it('a net from a file: its faults are told, its datum is asked about, and it ope
   await dialog.getByText('The elevations differ').waitFor();
   await dialog.getByRole('button', { name: 'Make the net all the same' }).click();
   await page.getByRole('application').waitFor();
-  await expect.poll(() => cell(page, 'Drops').textContent()).toContain('10');
-  await expect.poll(() => scheduleRow(page, 'P1').textContent()).toMatch(/\d+\.\d/);
+  await expect.poll(() => cell(page, 'Drops').textContent(), { timeout: 15_000 }).toContain('10');
+  await expect.poll(() => scheduleRow(page, 'P1').textContent(), { timeout: 15_000 }).toMatch(/\d+\.\d/);
   await page.context().close();
 });
 

@@ -58,8 +58,8 @@ export async function traceBoundary(
 export async function typeWaterLevels(page: Page, headwater: string, tailwater: string): Promise<void> {
   await cell(page, 'Headwater').click();
   const form = page.getByRole('region', { name: 'Water levels' });
-  await typeInto(form.getByLabel(/^Headwater/), headwater);
-  await typeInto(form.getByLabel(/^Tailwater/), tailwater);
+  await typeInto(form.getByLabel(/^Headwater,/), headwater);
+  await typeInto(form.getByLabel(/^Tailwater,/), tailwater);
   await form.getByRole('button', { name: 'Close' }).click();
 }
 

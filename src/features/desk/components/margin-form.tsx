@@ -159,6 +159,7 @@ export function MarginFormPane({
         <ReadingPane
           key={`${open.pointId} ${open.byChoice === true}`}
           store={store}
+          checks={checks}
           pointId={open.pointId}
           keepsFocus={open.byChoice === true}
           onOpen={onOpen}

@@ -5,6 +5,7 @@ import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 import { fixedText, signedText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+import type { DeskChecks, WaysState } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { DoubtSharesList } from './doubt-shares.tsx';
 import { FormPane } from './form-pane.tsx';
@@ -12,13 +13,14 @@ import type { MarginForm } from './margin-form.tsx';
 import { Aside, MarginSection } from './margin-section.tsx';
 import { FigureCell, MarginTable, RowHead } from './margin-table.tsx';
 import { pointRemark } from './schedule-rows.ts';
-import { usePointWays, type WaysState } from './use-point-ways.ts';
+import { usePointWays } from './use-point-ways.ts';
 
 /** Two readings of one point farther apart than this, in drops, are flagged. */
 const APART_DROPS = 0.1;
 
 interface ReadingPaneProps {
   store: DeskStore;
+  checks: DeskChecks;
   pointId: string;
   keepsFocus: boolean;
   onOpen: (form: MarginForm) => void;
@@ -28,14 +30,22 @@ interface ReadingPaneProps {
 }
 
 /** How the figure of a point came about, in words and over the sheet, and how far it can be trusted. */
-export function ReadingPane({ store, pointId, keepsFocus, onOpen, onClose, onSheet }: ReadingPaneProps) {
+export function ReadingPane({
+  store,
+  checks,
+  pointId,
+  keepsFocus,
+  onOpen,
+  onClose,
+  onSheet,
+}: ReadingPaneProps) {
   const document = useStore(store, (state) => state.document);
   const reading = useStore(store, (state) => state.reading);
   const readOnly = useStore(store, (state) => state.readOnly);
   const isCurrent = useStore(store, (state) => state.readingOf === state.documentRevision);
   const point = reading?.points.find(({ id }) => id === pointId);
   const byHand = point?.byHand ?? null;
-  const ways = usePointWays(store, isCurrent && byHand !== null ? document : null, pointId);
+  const ways = usePointWays(checks, isCurrent && byHand !== null ? document : null, pointId);
   if (!point) return null;
   return (
     <FormPane title={text.title(point.name)} onClose={onClose} keepsFocus={keepsFocus}>

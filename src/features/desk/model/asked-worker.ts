@@ -10,6 +10,8 @@ export type AskedWorker<Question, Answer> = {
 export type Asked<Question> = {
   /** Asks; a question still under way is given up. */
   ask(question: Question): void;
+  /** Wants no answer any more; what works stays ready unless it is at work. */
+  drop(): void;
   /** Gives the question under way up, and frees what worked on it. */
   cancel(): void;
 };
@@ -56,6 +58,9 @@ export function createAsked<Question, Answer>(options: {
       worker ??= started();
       busy = true;
       worker.postMessage(question);
+    },
+    drop() {
+      if (busy) cancel();
     },
     cancel,
   };

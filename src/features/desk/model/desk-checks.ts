@@ -4,9 +4,11 @@ import type { BesideSolution } from '#shared/compute/beside/beside-solution.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { type AskedWorker, createAsked } from './asked-worker.ts';
-import { computedNetGuides, differenceGuides, netCheckGuides } from './check-guides.ts';
+import { computedNetGuides, differenceGuides, explanationGuides, netCheckGuides } from './check-guides.ts';
 import type { DeskStore } from './desk-state.ts';
+import { GUIDE_OWNERS } from './guides.ts';
 import type { IndependentAnswer, IndependentQuestion, IndependentStage } from './independent-worker.ts';
+import type { WaysAnswer, WaysQuestion } from './ways-worker.ts';
 
 /** What became of the last independent solution that was asked for. */
 export type IndependentState =
@@ -17,7 +19,11 @@ export type IndependentState =
 /** A solution and the change of the document that it is of; older than the document it is out of date. */
 export type IndependentResult = { readonly beside: BesideSolution; readonly of: number };
 
+/** Whether the ways by which a point is read are drawn over the sheet; `none`: there are none to draw. */
+export type WaysState = 'working' | 'shown' | 'none' | 'failed';
+
 export type ChecksState = {
+  readonly ways: WaysState;
   /** The net check is drawn over the sheet. */
   readonly netCheckShown: boolean;
   /** The fault chosen in the list, see `faultKey`. */
@@ -30,6 +36,8 @@ export type ChecksState = {
 };
 
 export type DeskChecks = StoreApi<ChecksState> & {
+  /** Draws over the sheet how a point is read by hand, or takes it away with null. */
+  explain(question: WaysQuestion | null): void;
   showNetCheck(shown: boolean): void;
   chooseFault(key: string | null): void;
   showNet(shown: boolean): void;
@@ -42,14 +50,19 @@ export type DeskChecks = StoreApi<ChecksState> & {
 };
 
 type IndependentWorker = AskedWorker<IndependentQuestion, IndependentAnswer>;
+type WaysWorker = AskedWorker<WaysQuestion, WaysAnswer>;
 
-function startWorker(): IndependentWorker {
-  return new Worker(new URL('./independent-worker.ts', import.meta.url), {
-    type: 'module',
-  }) as IndependentWorker;
-}
+/** The workers, each started with the first question that it is asked. */
+export type CheckWorkers = { independent(): IndependentWorker; ways(): WaysWorker };
+
+const WORKERS: CheckWorkers = {
+  independent: () =>
+    new Worker(new URL('./independent-worker.ts', import.meta.url), { type: 'module' }) as IndependentWorker,
+  ways: () => new Worker(new URL('./ways-worker.ts', import.meta.url), { type: 'module' }) as WaysWorker,
+};
 
 const NOTHING_YET: ChecksState = {
+  ways: 'none',
   netCheckShown: false,
   chosenFault: null,
   independent: { state: 'none' },
@@ -58,20 +71,32 @@ const NOTHING_YET: ChecksState = {
   differencesShown: false,
 };
 
-/** The checks of one open net: the net check over the sheet, and the independent solution beside the net. */
-export function createDeskChecks(store: DeskStore, start: () => IndependentWorker = startWorker): DeskChecks {
+/**
+ * The checks of one open net: how a point is read, the net check over the sheet, and the independent solution beside the
+ * net.
+ */
+export function createDeskChecks(store: DeskStore, workers: CheckWorkers = WORKERS): DeskChecks {
   const checks = createStore<ChecksState>(() => NOTHING_YET);
   let askedOf = 0;
   const fail = (said: string, at: SheetPoint | null = null) =>
     checks.setState({ independent: { state: 'failed', text: said, at } });
   const solver = createAsked<IndependentQuestion, IndependentAnswer>({
-    start,
+    start: workers.independent,
     isLast: (answer) => answer.state !== 'working',
     onFailure: () => fail(text.broken),
     onAnswer(answer) {
       if (answer.state === 'working') return checks.setState({ independent: answer });
       if (answer.state === 'failed') return fail(answer.text, answer.at);
       checks.setState({ independent: { state: 'none' }, result: { beside: answer.beside, of: askedOf } });
+    },
+  });
+
+  const explainer = createAsked<WaysQuestion, WaysAnswer>({
+    start: workers.ways,
+    onFailure: () => checks.setState({ ways: 'failed' }),
+    onAnswer(ways) {
+      store.setGuides('explanation', ways === null ? null : explanationGuides(ways));
+      checks.setState({ ways: ways === null ? 'none' : 'shown' });
     },
   });
 
@@ -94,6 +119,12 @@ export function createDeskChecks(store: DeskStore, start: () => IndependentWorke
 
   return {
     ...checks,
+    explain(question) {
+      store.setGuides('explanation', null);
+      checks.setState({ ways: question === null ? 'none' : 'working' });
+      if (question === null) explainer.drop();
+      else explainer.ask(question);
+    },
     showNetCheck: (netCheckShown) => checks.setState({ netCheckShown, chosenFault: null }),
     chooseFault: (chosenFault) =>
       checks.setState({
@@ -123,9 +154,10 @@ export function createDeskChecks(store: DeskStore, start: () => IndependentWorke
       return () => {
         for (const end of endings) end();
         solver.cancel();
+        explainer.cancel();
         if (checks.getState().independent.state === 'working')
           checks.setState({ independent: { state: 'none' } });
-        for (const owner of ['netCheck', 'computedNet', 'differences'] as const) store.setGuides(owner, null);
+        for (const owner of GUIDE_OWNERS) store.setGuides(owner, null);
       };
     },
   };

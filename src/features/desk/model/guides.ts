@@ -48,7 +48,8 @@ export type Guides = {
 };
 
 /** Whose guides they are; each shows and takes away its own. */
-export type GuideOwner = 'explanation' | 'netCheck' | 'computedNet' | 'differences';
+export const GUIDE_OWNERS = ['explanation', 'netCheck', 'computedNet', 'differences'] as const;
+export type GuideOwner = (typeof GUIDE_OWNERS)[number];
 
 export type GuidesByOwner = Readonly<Partial<Record<GuideOwner, Guides>>>;
 

@@ -37,6 +37,7 @@ function readingPane(document: FlowNetDocument, change: (point: PointReading) =>
   return textOf(
     createElement(ReadingPane, {
       store,
+      checks: createDeskChecks(store),
       pointId: points[0]!.id,
       keepsFocus: false,
       onOpen: nothing,

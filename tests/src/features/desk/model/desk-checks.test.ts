@@ -7,6 +7,7 @@ import type {
   IndependentAnswer,
   IndependentQuestion,
 } from '#client/features/desk/model/independent-worker.ts';
+import type { WaysAnswer, WaysQuestion } from '#client/features/desk/model/ways-worker.ts';
 import type { BesideSolution } from '#shared/compute/beside/beside-solution.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
@@ -57,14 +58,14 @@ function corner(at: number): SheetPoint[] {
   ];
 }
 
-type Standin = AskedWorker<IndependentQuestion, IndependentAnswer> & {
-  asked: IndependentQuestion[];
+type Standin<Question, Answer> = AskedWorker<Question, Answer> & {
+  asked: Question[];
   ended: boolean;
-  say(answer: IndependentAnswer): void;
+  say(answer: Answer): void;
 };
 
-function standIn(): Standin {
-  const worker: Standin = {
+function standIn<Question, Answer>(made: Array<Standin<Question, Answer>>): Standin<Question, Answer> {
+  const worker: Standin<Question, Answer> = {
     asked: [],
     ended: false,
     onmessage: null,
@@ -73,25 +74,79 @@ function standIn(): Standin {
     terminate: () => {
       worker.ended = true;
     },
-    say: (answer) => worker.onmessage?.({ data: answer } as MessageEvent<IndependentAnswer>),
+    say: (answer) => worker.onmessage?.({ data: answer } as MessageEvent<Answer>),
   };
+  made.push(worker);
   return worker;
 }
 
+/** Each net is read once. */
+const readings = new Map([drawn, poor].map((document) => [document, readNet(document)]));
+
 function desk(document: FlowNetDocument) {
-  const workers: Standin[] = [];
-  const store = createDeskStore({ document }, { reading: readNet(document) });
-  const checks = createDeskChecks(store, () => {
-    const worker = standIn();
-    workers.push(worker);
-    return worker;
+  const workers: Array<Standin<IndependentQuestion, IndependentAnswer>> = [];
+  const explainers: Array<Standin<WaysQuestion, WaysAnswer>> = [];
+  const store = createDeskStore({ document }, { reading: readings.get(document)! });
+  const checks = createDeskChecks(store, {
+    independent: () => standIn(workers),
+    ways: () => standIn(explainers),
   });
   const end = checks.connect();
-  return { store, checks, workers, end, guides: () => store.getState().guides };
+  return { store, checks, workers, explainers, end, guides: () => store.getState().guides };
 }
 
 let open: ReturnType<typeof desk>;
 afterEach(() => open.end());
+
+describe('how a point is read, over the sheet', () => {
+  const ways: WaysAnswer = {
+    strip: corner(0),
+    toBefore: [
+      [5, 5],
+      [5, 1],
+    ],
+    toAfter: [
+      [5, 5],
+      [7, 7],
+      [7, 9],
+    ],
+    fraction: 0.25,
+  };
+
+  it('tints the strip and draws both ways with their parts, and goes when the point is left', () => {
+    open = desk(drawn);
+    const { checks, explainers, guides } = open;
+    checks.explain({ document: drawn, pointId: 'p' });
+    expect(checks.getState().ways).toBe('working');
+    explainers[0]!.say(ways);
+    expect(checks.getState().ways).toBe('shown');
+    expect(guides().explanation?.areas.map(({ tone }) => tone)).toEqual(['strip']);
+    expect(guides().explanation?.lines.map(({ points }) => points.length)).toEqual([2, 3]);
+    // The part of the interval stands on the last piece of its way.
+    expect(guides().explanation?.marks.map(({ at, text }) => [at, text])).toEqual([
+      [[5, 3], '0.25'],
+      [[7, 8], '0.75'],
+    ]);
+    checks.explain(null);
+    expect(guides().explanation).toBeUndefined();
+  });
+
+  it('keeps its worker from point to point, and gives one up that is still at work', () => {
+    open = desk(drawn);
+    const { checks, explainers, guides } = open;
+    checks.explain({ document: drawn, pointId: 'p' });
+    explainers[0]!.say(ways);
+    checks.explain({ document: drawn, pointId: 'q' });
+    expect(explainers).toHaveLength(1);
+    checks.explain({ document: drawn, pointId: 'r' });
+    expect(explainers).toHaveLength(2);
+    expect(explainers[0]!.ended).toBe(true);
+    explainers[0]!.say(ways);
+    expect(guides().explanation).toBeUndefined();
+    explainers[1]!.onerror?.({ preventDefault: () => undefined } as ErrorEvent);
+    expect(checks.getState().ways).toBe('failed');
+  });
+});
 
 describe('the net check over the sheet', () => {
   it('shows poor cells with their ratio when asked to, and the chosen one apart', () => {
