@@ -12,9 +12,10 @@ export const explanationText = {
   field: 'The field, which is the figure',
   noField: 'The field (not solved here)',
   difference: 'Difference',
+  /** The finding at the point says what to look at. */
+  differenceLarge: 'Difference, more than 0.1 drop',
   drops: 'Drops lost',
   head: (unit: string) => `Total head, ${unit}`,
-  apart:
     'More than 0.1 drop apart. Hand’s rule is poor near tips and where cells are long; look at the lines here.',
   sameLines: 'Both read the same drawn lines: that they agree says nothing about the net itself.',
   drawn:

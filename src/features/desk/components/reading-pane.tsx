@@ -121,7 +121,7 @@ function TwoReadings({ point, document, ways }: FiguresProps & { ways: WaysState
           <FigureCell look="font-semibold">{fixedText(byField?.totalHead ?? null, decimals.head)}</FigureCell>
         </tr>
         <tr>
-          <RowHead>{text.difference}</RowHead>
+          <RowHead strong={flagged}>{flagged ? text.differenceLarge : text.difference}</RowHead>
           <FigureCell look={flagged ? 'font-semibold text-attention' : ''}>
             {signedText(apart, decimals.drops)}
           </FigureCell>
@@ -130,7 +130,6 @@ function TwoReadings({ point, document, ways }: FiguresProps & { ways: WaysState
           </FigureCell>
         </tr>
       </MarginTable>
-      {flagged ? <p className="m-0 text-attention">{text.apart}</p> : null}
       <div role="status">
         {ways === 'working' ? <Aside>{text.working}</Aside> : null}
         {ways === 'shown' ? <Aside>{text.drawn}</Aside> : null}
