@@ -16,7 +16,6 @@ export const explanationText = {
   differenceLarge: 'Difference, more than 0.1 drop',
   drops: 'Drops lost',
   head: (unit: string) => `Total head, ${unit}`,
-    'More than 0.1 drop apart. Hand’s rule is poor near tips and where cells are long; look at the lines here.',
   sameLines: 'Both read the same drawn lines: that they agree says nothing about the net itself.',
   drawn:
     'On the sheet: the strip between the two lines, and the shortest ways to them with their parts of the interval.',
