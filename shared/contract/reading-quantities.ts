@@ -132,7 +132,7 @@ export type CreepReading = z.infer<typeof creepReading>;
 
 export const stabilityReading = z.object({
   heave: z.array(heaveReading),
-  /** Null where no impervious contact leads from the headwater to the outlet. */
+  /** Null where no impervious contact leads from the headwater to the outlet, and in a section with a phreatic line. */
   creep: z.nullable(creepReading),
 });
 export type StabilityReading = z.infer<typeof stabilityReading>;

@@ -36,7 +36,7 @@ export const exitsText = {
   },
   creep: {
     title: 'Weighted creep, a rough cross-check',
-    none: 'No impervious contact leads from the headwater to the outlet.',
+    none: 'Only for flow under a structure whose impervious contact leads from the headwater to the outlet.',
     figures: (steep: string, flat: string, weighted: string, unit: string) =>
       `Steep contact ${steep} ${unit}, flat contact ${flat} ${unit}: weighted length ${weighted} ${unit}.`,
     ratio: (ratio: string) => `Weighted creep ratio ${ratio}.`,

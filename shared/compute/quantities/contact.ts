@@ -16,10 +16,12 @@ const MOST_LINES = 12;
 /**
  * Creep along the contact of the structure with its ground: the shortest chain of impervious lines that leads from the
  * headwater to an outlet, thin walls that branch off it counted down and up again. Null while the net is not finished
- * and where no such chain is traced. Lengths in the natural section. Source: Lane (1935). Never throws.
+ * where no such chain is traced, and in a section with a phreatic line, whose impervious base is the foundation of a dam
+ * and no contact that a structure has with its ground. Lengths in the natural section. Source: Lane (1935). Never throws.
  */
-export function creepRead({ model, frame, finished, quantities, ground }: PreparedNet): CreepReading | null {
-  if (!finished) return null;
+export function creepRead(prepared: PreparedNet): CreepReading | null {
+  const { model, frame, finished, quantities, ground, phreatic } = prepared;
+  if (!finished || phreatic !== null) return null;
   const lines = linesOfKind(model.lines, 'impervious');
   const ends = (role: 'headwater' | 'outlet') =>
     model.potentials.filter((potential) => potential.role === role).map(({ shape }) => shape);

@@ -28,7 +28,8 @@ export function ToolPalette({ store, layout = 'column', className }: ToolPalette
     <nav
       aria-label={text.title}
       className={classNames(
-        'flex bg-film',
+        // Hidden headings are placed by it, so that they do not widen the page of a phone.
+        'relative flex bg-film',
         column ? 'flex-col overflow-y-auto py-3.5' : 'items-stretch overflow-x-auto',
         className,
       )}

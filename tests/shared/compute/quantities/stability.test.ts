@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { basicParabolaNet } from '#shared/compute/exact/basic-parabola-net.ts';
 import { flatApronNet } from '#shared/compute/exact/flat-apron-net.ts';
 import { sheetPileNet } from '#shared/compute/exact/sheet-pile-net.ts';
 import { readNet } from '#shared/compute/read-net.ts';
@@ -126,5 +127,12 @@ describe('creep along the contact', () => {
     expect(creep!.flat).toBeCloseTo(20, 0);
     expect(creep!.steep).toBeCloseTo(12, 0);
     expect(creep!.weightedRatio!).toBeCloseTo((12 + 20 / 3) / 6, 1);
+  });
+
+  it('is not given for a dam with a phreatic line, whose base is its foundation', () => {
+    const dam = basicParabolaNet({ head: 20, drops: 10, channels: 3, focus: [14, 98] });
+    const reading = readNet(exactNetDocument(dam, { pxPerUnit: 110 }));
+    expect(reading.state).toBe('read');
+    expect(reading.stability.creep).toBeNull();
   });
 });
