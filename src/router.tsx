@@ -56,6 +56,7 @@ const signedInPages: RouteObject[] = [
   page('/drawings/:drawingId', async () => (await import('./pages/drawing/drawing-page.tsx')).DrawingPage),
   page('/nets/:netId', async () => (await import('./pages/desk/desk-page.tsx')).DeskPage),
   page('/revisions/:revisionId', async () => (await import('./pages/check/check-page.tsx')).CheckPage),
+  page('/revisions/:revisionId/sheet', async () => (await import('./pages/sheet/sheet-page.tsx')).SheetPage),
   page('/people', async () => (await import('./pages/people/people-page.tsx')).PeoplePage),
   page('/mails', async () => (await import('./pages/mails/mails-page.tsx')).MailsPage),
   page('/mails/:mailId', async () => (await import('./pages/mails/mail-page.tsx')).MailPage),

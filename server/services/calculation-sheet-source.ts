@@ -3,7 +3,7 @@ import type { CalculationSheetEntity } from '#server/entities/calculation-sheet-
 import { SheetEntity } from '#server/entities/drawing-entity.ts';
 import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
 import type { SheetSource } from '#shared/text/calculation-sheet/content.ts';
-import { notesUntil } from '#shared/text/calculation-sheet/record.ts';
+import { revisionSource } from '#shared/text/calculation-sheet/revision-source.ts';
 import { readDocument } from './net-document.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { placeOfNet } from './net-place.ts';
@@ -39,39 +39,10 @@ async function revisionMaterial(
   const { row, payload } = await openRevision(manager, revisionId);
   const { decision } = await revisionSummaryOf(manager, revisionId);
   const notes = await notesOfNet(manager, row.netId);
-  const { dam, drawing, section, netName, document, reading, engineVersion } = payload;
   return {
     sheet: await manager.findOneByOrFail(SheetEntity, { id: payload.sheet.id }),
     madeAt: new Date(decision?.decidedAt ?? payload.sentAt),
-    source: {
-      status: {
-        kind: 'revision',
-        label: payload.label,
-        hash: row.payloadHash,
-        previousHash: payload.previousHash,
-        sentAt: payload.sentAt,
-        sentBy: payload.sentBy.name,
-        reviewer: payload.reviewer.name,
-        message: payload.message,
-        decision: decision && {
-          decision: decision.decision,
-          by: decision.decidedBy.name,
-          note: decision.note,
-          at: decision.decidedAt,
-        },
-      },
-      jobNumber,
-      dam,
-      drawing,
-      section,
-      pageNumber: payload.sheet.pageNumber,
-      netName,
-      document,
-      reading,
-      engineVersion,
-      drawnBy: payload.drawnBy.map((person) => person.name),
-      notes: decision === null ? notes : notesUntil(notes, decision.decidedAt),
-    },
+    source: revisionSource({ payload, hash: row.payloadHash, decision, notes, jobNumber }),
   };
 }
 

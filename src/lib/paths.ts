@@ -10,6 +10,7 @@ export const paths = {
     pageNumber === undefined ? `/drawings/${drawingId}` : `/drawings/${drawingId}?sheet=${pageNumber}`,
   net: (netId: string) => `/nets/${netId}`,
   revision: (revisionId: string) => `/revisions/${revisionId}`,
+  revisionSheet: (revisionId: string) => `/revisions/${revisionId}/sheet`,
   people: '/people',
   mails: '/mails',
   mail: (mailId: string) => `/mails/${mailId}`,

@@ -8,8 +8,10 @@ import { revisionListQuery, revisionQuery } from '#client/features/revisions/api
 import { DecisionPanel } from '#client/features/revisions/components/decision-panel.tsx';
 import { RecordFacts } from '#client/features/revisions/components/record-facts.tsx';
 import { RevisionHistory } from '#client/features/revisions/components/revision-history.tsx';
+import { CalculationSheetPanel } from '#client/features/sheets/components/calculation-sheet-panel.tsx';
 import { paths } from '#client/lib/paths.ts';
 import { useMedia } from '#client/lib/use-media.ts';
+import { calculationSheetText } from '#client/text/calculation-sheet.ts';
 import { commonText } from '#client/text/common.ts';
 import { deskPageText } from '#client/text/desk-page.ts';
 import { checkText as text } from '#client/text/revisions.ts';
@@ -55,7 +57,12 @@ function Check({ revision }: { revision: RevisionDto }) {
           { label: `${section}, ${payload.netName}`, to: paths.net(payload.netId) },
           { label: text.crumb(summary.label) },
         ]}
-        end={<ButtonLink to={paths.net(payload.netId)}>{text.openNet}</ButtonLink>}
+        end={
+          <>
+            <ButtonLink to={paths.revisionSheet(summary.id)}>{calculationSheetText.printView}</ButtonLink>
+            <ButtonLink to={paths.net(payload.netId)}>{text.openNet}</ButtonLink>
+          </>
+        }
       >
         <CheckGrid
           heading={`${text.heading(summary.label)}, ${section}`}
@@ -86,6 +93,7 @@ function Check({ revision }: { revision: RevisionDto }) {
             <>
               <DecisionPanel revision={revision} />
               <RecordFacts revision={revision} />
+              <CalculationSheetPanel netId={payload.netId} revisionId={summary.id} />
               <section aria-labelledby="history" className="border-t border-rule px-3 py-2">
                 <h2 id="history" className="m-0 text-base font-bold">
                   {text.historyTitle}

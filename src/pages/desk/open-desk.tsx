@@ -148,7 +148,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
                 onSheet={() => setPane('sheet')}
               />
             ) : margin.shows === 'revisions' ? (
-              <RevisionsPane netId={netId} onClose={closeForm} />
+              <RevisionsPane netId={netId} flush={flush} onClose={closeForm} />
             ) : (
               <NetNotes
                 netId={netId}

@@ -1,0 +1,116 @@
+import { apiUrl } from '#client/lib/http.ts';
+import type { LineKind, SheetPoint } from '#shared/contract/document.ts';
+import type { SheetDto } from '#shared/contract/drawings.ts';
+import type { SectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
+
+/** Colour and dash of each kind, dashes in thousandths of the figure's width. */
+const LOOKS: Record<LineKind, { colour: string; width: number; dash: readonly number[] }> = {
+  equipotential: { colour: 'var(--color-equipotential)', width: 1.6, dash: [] },
+  flowLine: { colour: 'var(--color-flow-line)', width: 1.6, dash: [16, 3] },
+  phreaticLine: { colour: 'var(--color-phreatic)', width: 2, dash: [7, 4] },
+  submergedFace: { colour: 'var(--color-equipotential)', width: 2.8, dash: [] },
+  outflowFace: { colour: 'var(--color-equipotential)', width: 2.8, dash: [3, 4] },
+  drain: { colour: 'var(--color-boundary)', width: 2.3, dash: [6, 3] },
+  impervious: { colour: 'var(--color-boundary)', width: 2, dash: [] },
+  ground: { colour: 'var(--color-boundary)', width: 1.4, dash: [] },
+  soilBoundary: { colour: 'var(--color-boundary)', width: 1.4, dash: [9, 3, 2, 3] },
+};
+/** Enough for a print of the screen's page. */
+const WANTED_PX = 1800;
+
+/** The section with its traces over the scan, as on the first page of the PDF. */
+export function SheetFigure({
+  figure,
+  sheet,
+  label,
+}: {
+  figure: SectionFigure;
+  sheet: SheetDto;
+  label: string;
+}) {
+  const { crop } = figure;
+  const unit = crop[2] / 1000;
+  const path = (points: readonly SheetPoint[]) => points.map((point) => point.join(',')).join(' ');
+  return (
+    <figure className="m-0">
+      <svg
+        viewBox={crop.join(' ')}
+        role="img"
+        aria-label={label}
+        className="block h-auto w-full border border-ink bg-white"
+      >
+        <Tiles sheet={sheet} crop={crop} />
+        {figure.lines.map(({ id, kind, points }) => (
+          <polyline
+            key={id}
+            points={path(points)}
+            fill="none"
+            stroke={LOOKS[kind].colour}
+            strokeWidth={LOOKS[kind].width * unit}
+            strokeDasharray={LOOKS[kind].dash.map((length) => length * unit).join(' ')}
+          />
+        ))}
+        {figure.lines.map(({ id, kind, points: [first], label: text }) =>
+          first && text ? (
+            <Label key={id} at={first} unit={unit} colour={LOOKS[kind].colour} text={text} />
+          ) : null,
+        )}
+        {figure.points.map(({ name, at }) => (
+          <g key={`${name} ${at.join()}`}>
+            <circle
+              cx={at[0]}
+              cy={at[1]}
+              r={4 * unit}
+              fill="none"
+              stroke="var(--color-point)"
+              strokeWidth={1.6 * unit}
+            />
+            <Label at={at} unit={unit} colour="var(--color-point)" text={name} />
+          </g>
+        ))}
+      </svg>
+    </figure>
+  );
+}
+
+function Label({ at, unit, colour, text }: { at: SheetPoint; unit: number; colour: string; text: string }) {
+  return (
+    <text
+      x={at[0] + 6 * unit}
+      y={at[1] - 5 * unit}
+      fontSize={13 * unit}
+      fill={colour}
+      stroke="white"
+      strokeWidth={3 * unit}
+      paintOrder="stroke"
+    >
+      {text}
+    </text>
+  );
+}
+
+/** The tiles of the coarsest level that is fine enough, as far as they meet the part that is shown. */
+function Tiles({ sheet, crop }: { sheet: SheetDto; crop: SectionFigure['crop'] }) {
+  const { rendition, tileSizePx, maxZoom } = sheet.tiles;
+  const levels = Array.from({ length: maxZoom + 1 }, (_, level) => level);
+  const zoom = levels.find((level) => crop[2] / 2 ** (maxZoom - level) >= WANTED_PX) ?? maxZoom;
+  const size = tileSizePx * 2 ** (maxZoom - zoom);
+  const range = (from: number, length: number, most: number) => {
+    const first = Math.floor(from / size);
+    const last = Math.ceil(Math.min(from + length, most) / size);
+    return Array.from({ length: Math.max(0, last - first) }, (_, i) => first + i);
+  };
+  return range(crop[1], crop[3], sheet.heightPx).flatMap((row) =>
+    range(crop[0], crop[2], sheet.widthPx).map((column) => (
+      <image
+        key={`${column} ${row}`}
+        href={apiUrl(`/sheets/${sheet.id}/tiles/${rendition}/${zoom}/${column}_${row}`)}
+        x={column * size}
+        y={row * size}
+        width={Math.min(size, sheet.widthPx - column * size)}
+        height={Math.min(size, sheet.heightPx - row * size)}
+        preserveAspectRatio="none"
+      />
+    )),
+  );
+}
