@@ -4,6 +4,7 @@ import type { NetDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import type { FieldMemory } from '#shared/compute/field/field-memory.ts';
 import { fieldsOnDemand } from '#shared/compute/field/strip-fields.ts';
 import { withholdsFigures } from '#shared/compute/findings.ts';
+import { boundaryEdges } from '#shared/compute/net/boundary-edges.ts';
 import { countChannels } from '#shared/compute/net/channels.ts';
 import {
   extentOf,
@@ -222,6 +223,7 @@ function groundOf(
   return {
     ...fieldGround,
     strips: model.strips,
+    edges: boundaryEdges(model),
     fieldOf: fieldsOnDemand(fieldGround, memory),
     bodies: solidBodies(shapes('impervious'), shapes('equipotential'), model.reach),
     phreaticLines: shapes('phreaticLine'),

@@ -57,7 +57,7 @@ export function modelNet(
   const flowLines = linesOfKind(lines, 'flowLine');
   const { all, findings } = potentialsOf(lines, map, water, accuracyPx);
   const traced = linesOfKind(lines, 'equipotential');
-  const reach = Math.max(3 * accuracyPx, REACH_PART * medianLength(traced.length > 0 ? traced : lines));
+  const reach = reachOf(lines, accuracyPx);
   const potentials = joinBoundaries(all, reach);
   const carriers = carriersOf(walls, flowLines, potentials);
   const edges = [...walls, ...potentials].map(({ shape }) => shape);
@@ -105,6 +105,12 @@ export function modelNet(
   };
 }
 
+/** Greatest gap taken for a tracing error, in the pixels of the lines. */
+export function reachOf(lines: readonly NetLine[], accuracyPx: number): number {
+  const traced = linesOfKind(lines, 'equipotential');
+  return Math.max(3 * accuracyPx, REACH_PART * medianLength(traced.length > 0 ? traced : lines));
+}
+
 function shapesOf(lines: readonly NetLine[]): Polyline[] {
   return lines.map((line) => line.shape);
 }
@@ -113,7 +119,7 @@ function shapesOf(lines: readonly NetLine[]): Polyline[] {
  * Faces along which the head is the elevation carry feet too: equipotentials end on them. So do boundaries of a head
  * between the highest and the lowest, which the flow passes beside.
  */
-function carriersOf(
+export function carriersOf(
   walls: readonly NetLine[],
   flowLines: readonly NetLine[],
   potentials: readonly Potential[],
@@ -143,8 +149,9 @@ function headLines(equipotentials: readonly Equipotential[], potentials: readonl
   ];
 }
 
-function stripsOf(
-  order: FlowOrder,
+/** The strips of the pairs that have one, in the order of the pairs; `graphWith` adds carriers to those of the net. */
+export function stripsOf(
+  order: Pick<FlowOrder, 'pairs'>,
   equipotentials: readonly Equipotential[],
   potentials: readonly Potential[],
   graphWith: (more: readonly Carrier[]) => CarrierGraph,

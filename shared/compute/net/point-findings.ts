@@ -14,6 +14,13 @@ export const RULES_APART = 0.1;
 export const STEEP = 0.03;
 
 /**
+ * So near the end of a potential boundary, in tracing accuracies and besides the gap there, the edge itself is where two
+ * traces happen to end: it is taken to be off by the gap, and by as many accuracies at least.
+ */
+const NEAR_EDGE = 5;
+const EDGE_OFF = 3;
+
+/**
  * What is doubtful about one reading: the two rules far apart, a strip that could not be solved, a head
  * that changes within a pixel or two, a negative pressure, a thin wall or an open end too near. `at` in working pixels; heads in the document's length unit.
  */
@@ -48,7 +55,7 @@ export function questionReading(
       );
     }
   }
-  const tremor = dropsByTremor(hand, field, ground);
+  const tremor = dropsByTremor(at, hand, field, ground);
   if (tremor > STEEP) {
     found.push(
       about(
@@ -98,11 +105,18 @@ function isNearOpenEnd(at: SheetPx, way: HandReading): boolean {
 }
 
 /** Drops by which the head changes over the tracing accuracy: |∇h|·accuracy by the head of a drop there. */
-function dropsByTremor(hand: HandAt, field: FieldAt | null, ground: ReadingGround): number {
+function dropsByTremor(at: SheetPx, hand: HandAt, field: FieldAt | null, ground: ReadingGround): number {
   if (field === null) return 0;
   const { before, after } = hand.drops;
   const perDrop = Math.abs(hand.headBefore - hand.headAfter) / Math.abs(after - before);
   const perPx = Math.hypot(...field.gradient) * ground.map.unitsPerPx;
-  const drops = (perPx * ground.tracingAccuracyPx) / perDrop;
+  const drops = (perPx * accuracyAt(at, ground)) / perDrop;
   return Number.isFinite(drops) ? drops : 0;
+}
+
+/** Pixels by which the tracing may be off at a place: its accuracy, or more where a boundary ends. */
+function accuracyAt([x, y]: SheetPx, { edges, tracingAccuracyPx }: ReadingGround): number {
+  return edges
+    .filter(({ at, gap }) => Math.hypot(at[0] - x, at[1] - y) <= NEAR_EDGE * tracingAccuracyPx + gap)
+    .reduce((off, { gap }) => Math.max(off, EDGE_OFF * tracingAccuracyPx, gap), tracingAccuracyPx);
 }

@@ -4,6 +4,7 @@ import type { SheetPx } from '#shared/compute/frames.ts';
 import type { Ring } from '#shared/compute/geometry/polygon.ts';
 import type { Polyline } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
+import type { BoundaryEdge } from '#shared/compute/net/boundary-edges.ts';
 import type { NetHeads } from '#shared/compute/net/net-heads.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
@@ -15,6 +16,8 @@ export type ReadingGround = {
   readonly strips: readonly Strip[];
   readonly heads: NetHeads;
   readonly walls: readonly Polyline[];
+  /** Where potential boundaries end. */
+  readonly edges: readonly BoundaryEdge[];
   /** Closed impervious outlines inside which nothing flows. */
   readonly bodies: readonly Ring[];
   readonly phreaticLines: readonly Polyline[];

@@ -70,8 +70,8 @@ export function stripBetween(
   return null;
 }
 
-/** Asked between the ends only: a foot may reach a tracing error's width into the ground beside it. */
-function holdsPartOf(ring: Ring, shape: Polyline): boolean {
+/** True when a line runs in an outline. Asked between the ends only: a foot may reach a tracing error's width into the ground beside it. */
+export function holdsPartOf(ring: Ring, shape: Polyline): boolean {
   const length = lengthOf(shape);
   return PARTS_ASKED.some((part) => ringContains(ring, ...pointAlong(shape, part * length)));
 }

@@ -101,6 +101,38 @@ describe('a drain below the tailwater, carelessly traced', () => {
   });
 });
 
+describe('within 20 px of the edges of the floor', () => {
+  const net = apronDrainNet({ tailwater: 100.2, drainHead: 98.25 });
+
+  // Unasked-for errors that are left: floor and bed end too far to the same side, which nothing on the drawing tells.
+  it.each([
+    [0, 0.12],
+    [20, 0.25],
+  ])(
+    'with gaps of up to %i px, what the trace puts wrong by more than %f drop is questioned',
+    (gapPx, most) => {
+      let questioned = 0;
+      for (let seed = 1; seed <= 3; seed += 1) {
+        const random = seededRandom(seed + 50);
+        const places = Array.from({ length: 60 }, (_, i): [number, number] => {
+          const [away, turn] = [(1 + 19 * random()) / 50, Math.PI * (1 + random())];
+          return [(i % 2 === 0 ? -10 : 10) + away * Math.cos(turn), 98 + away * Math.sin(turn)];
+        });
+        const readings = places.map((at) => ({ at, clicked: true }));
+        const traced = apronDrainDocument(net, { jitterPx: 1.5, seed, readings });
+        const { points } = readNet(gapPx === 0 ? traced : drawnCarelessly(traced, gapPx, seed));
+        points.forEach((point, i) => {
+          if (point.totalHead === null) return;
+          const error = Math.abs(point.totalHead - net.headAt(...places[i]!)) / 0.5;
+          if (point.findings.length > 0) questioned += 1;
+          else expect(error, `seed ${seed}, ${places[i]}: ${point.explanation}`).toBeLessThan(most);
+        });
+      }
+      expect(questioned).toBeGreaterThan(90);
+    },
+  );
+});
+
 describe('levels that the order denies', () => {
   const net = apronDrainNet({ tailwater: 100.2, drainHead: 98.25 });
   const document = apronDrainDocument(net, { readings: [{ at: [0, 90], clicked: true }] });
