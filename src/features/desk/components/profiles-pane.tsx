@@ -38,7 +38,7 @@ export function ProfilesPane({ store, views, netName, onForm, onSheet }: Profile
     onSheet();
   };
   return (
-    <section aria-label={text.title} aria-busy={stale} className="h-full overflow-auto bg-film">
+    <section aria-label={text.title} aria-busy={stale} className="relative h-full overflow-auto bg-film">
       <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
         {views}
         {stale ? <span className="text-ink-2">{text.workingOut}</span> : null}

@@ -25,12 +25,12 @@ interface SchedulePaneProps {
 
 /** The schedule below the sheet, with what makes its figures and what may be taken from it. */
 export function SchedulePane({ store, onDownload, onAdd, className = '', views }: SchedulePaneProps) {
-  const { document, reading, documentRevision, readingOf, readingFailed, readOnly, selection } =
+  const { document, reading, documentRevision, pointsOf, readingFailed, readOnly, selection } =
     useStore(store);
   const [sort, setSort] = useState<Sort>(ENTERED_ORDER);
   const box = useRef<HTMLElement>(null);
   const notice = useNotice();
-  const stale = readingOf !== documentRevision;
+  const stale = pointsOf !== documentRevision;
   const selectedIds = selection.kind === 'readingPoint' ? selection.ids : [];
   useSelectedInView(box, selectedIds[0]);
   const copy = async () => {
@@ -49,7 +49,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '', views }
       ref={box}
       aria-label={text.title}
       aria-busy={stale}
-      className={`overflow-auto bg-film ${className}`}
+      className={`relative overflow-auto bg-film ${className}`}
     >
       <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
         {views ?? <h2 className="m-0 text-base font-bold">{text.title}</h2>}
