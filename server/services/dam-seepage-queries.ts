@@ -1,5 +1,6 @@
 import type { EntityManager } from 'typeorm';
 import { DamEntity } from '#server/entities/dam-entity.ts';
+import { NetEntity } from '#server/entities/net-entity.ts';
 import { invalidInput, notFound } from '#server/errors/app-error.ts';
 import { type ReadNet, seepageTogether } from '#shared/compute/quantities/seepage-together.ts';
 import { seepagePerMetre } from '#shared/compute/quantities/seepage-volume.ts';
@@ -30,16 +31,25 @@ export async function damSeepageOf(
   return { damId, unitSystem, datum, sections, ...seepageTogether(nets, unitSystem) };
 }
 
+const NOT_OF_DAM = 'A net that was chosen does not exist, or belongs to another dam. Choose the nets again.';
+
 async function placesOf(
   manager: EntityManager,
   damId: string,
   netIds: readonly string[],
 ): Promise<NetPlace[]> {
-  const places = await Promise.all(netIds.map((netId) => placeOfNet(manager, netId)));
-  if (places.some(({ dam }) => dam.id !== damId)) throw notFound();
+  const places = await Promise.all(netIds.map((netId) => placeOnDam(manager, damId, netId)));
   if (new Set(places.map(({ section }) => section.id)).size < places.length)
     throw invalidInput([{ path: 'nets', message: 'Choose one net only for each section.' }]);
   return places;
+}
+
+/** A net of another dam is answered as one that does not exist. */
+async function placeOnDam(manager: EntityManager, damId: string, netId: string): Promise<NetPlace> {
+  if (!(await manager.existsBy(NetEntity, { id: netId }))) throw notFound(NOT_OF_DAM);
+  const place = await placeOfNet(manager, netId);
+  if (place.dam.id !== damId) throw notFound(NOT_OF_DAM);
+  return place;
 }
 
 /** What one net says of the seepage at its section; a net that cannot be read says nothing. */

@@ -2,18 +2,19 @@ import * as z from 'zod/mini';
 import { id } from './common.ts';
 import { unitSystem } from './unit-system.ts';
 
-/** Nets of one dam that can be put together at most, one for each section. */
-export const MOST_SECTIONS = 100;
+/** Nets put together at most, one for each section: all their readings are to be kept, so that one change reads one net. */
+export const MOST_SECTIONS = 60;
+const TOO_MANY = `Choose nets of ${MOST_SECTIONS} sections at most.`;
 const ID_LENGTH = 36;
 
 const commaList = z.pipe(
-  z.string().check(z.toLowerCase(), z.maxLength(MOST_SECTIONS * (ID_LENGTH + 1))),
+  z.string().check(z.toLowerCase(), z.maxLength(MOST_SECTIONS * (ID_LENGTH + 1), TOO_MANY)),
   z.transform((text) => [...new Set(text.split(',').filter((part) => part !== ''))]),
 );
 
 /** `nets=<id>,<id>,…`: the net that stands for each section, chosen by the engineer; none to see what there is. */
 export const damSeepageQuery = z.object({
-  nets: z._default(z.pipe(commaList, z.array(id).check(z.maxLength(MOST_SECTIONS))), []),
+  nets: z._default(z.pipe(commaList, z.array(id).check(z.maxLength(MOST_SECTIONS, TOO_MANY))), []),
 });
 
 const figure = z.nullable(z.number());

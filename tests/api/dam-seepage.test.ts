@@ -1,6 +1,6 @@
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { type DamSeepageDto, damSeepageDto } from '#shared/contract/dam-seepage.ts';
+import { type DamSeepageDto, damSeepageDto, MOST_SECTIONS } from '#shared/contract/dam-seepage.ts';
 import { singleOf } from '#shared/contract/document.ts';
 import {
   addFinishedNet,
@@ -151,6 +151,9 @@ describe('seepage along a dam', () => {
     expect(body).toMatchObject({ code: 'invalid-input' });
     expect((await seepage(place.netId, place.netId.toUpperCase())).chosen).toHaveLength(1);
     await place.caller.get(`/dams/${place.damId}/seepage?nets=all`).expect(400);
+    const many = Array.from({ length: MOST_SECTIONS + 1 }, () => uuidv7()).join(',');
+    const refused = await place.caller.get(`/dams/${place.damId}/seepage?nets=${many}`).expect(400);
+    expect(refused.body.detail).toContain('at most');
   });
 
   it('hides nets of another dam as if they did not exist, also from who may read both', async () => {

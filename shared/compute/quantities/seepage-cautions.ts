@@ -22,11 +22,7 @@ export function seepageCautions(chosen: readonly ChosenNet[], damSystem: UnitSys
   const bare = counted.filter(({ factor }) => factor === null);
   return [
     ...levelCautions(counted, damSystem),
-    ...about(
-      left,
-      'leftOut',
-      (names) => `Not in the total: ${names}. It is worked out as if they were not there.`,
-    ),
+    ...about(left, 'leftOut', (names) => `The total is worked out without ${names}.`),
     ...about(
       traced,
       'tracedOnly',

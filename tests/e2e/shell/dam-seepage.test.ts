@@ -20,9 +20,9 @@ import { signIn } from './support.ts';
 let server: RealServer;
 let browser: TestBrowser;
 let page: Page;
-/** Section B–B at chainage 212 and C–C at 312, with a net of each, and a net of C–C at a higher headwater. */
+/** Sections B–B at chainage 212 and C–C at 312 with a net of each, a net of C–C at a higher headwater, and one begun. */
 let place: NetPlaceFixture;
-const further = { section: uuidv7(), net: uuidv7(), flood: uuidv7() };
+const further = { section: uuidv7(), net: uuidv7(), flood: uuidv7(), axis: uuidv7(), begun: uuidv7() };
 
 beforeAll(async () => {
   server = await startRealServer();
@@ -46,6 +46,9 @@ beforeAll(async () => {
     await caller.post(`/sections/${further.section}/nets`, { id, name }).expect(201);
     await fillNet(caller, id, withoutKnownPoints(id === further.net));
   }
+  const axis = { id: further.axis, name: 'Spillway axis', chainage: '400', frame: null };
+  await caller.post(`/sheets/${sheetId}/sections`, axis).expect(201);
+  await caller.post(`/sections/${further.axis}/nets`, { id: further.begun, name: 'Begun' }).expect(201);
   await enter(place.netId, 'permeability', { k: 2e-6, unit: 'm/s', factor: 2 });
   await enter(further.net, 'permeability', { k: 4e-6, unit: 'm/s', factor: 3 });
   const { document } = await openNet(caller, further.flood);
@@ -53,6 +56,8 @@ beforeAll(async () => {
   const headwater = levels?.kind === 'waterLevels' ? (levels.headwater ?? 0) + 0.02 : 0;
   await enter(further.flood, 'waterLevels', { headwater });
   await enter(further.flood, 'permeability', { k: 4e-6, unit: 'm/s', factor: 3 });
+  // The sheet of the fixture has no picture.
+  browser.expectConsoleError(/status of 404.*\/thumbnail\)$/);
   page = await browser.newPage();
   await page.goto(`/dams/${place.damId}`);
   await signIn(page, engineer);
@@ -102,6 +107,22 @@ describe('the seepage along a dam', () => {
     await expect.poll(() => totalRow().textContent()).not.toBe(cubicMetres);
   });
 
+  it('follows a change of a net that is chosen, by whomever', async () => {
+    const before = await totalRow().textContent();
+    await enter(further.net, 'permeability', { k: 2e-5 });
+    await expect.poll(() => totalRow().textContent(), { timeout: 15_000 }).not.toBe(before);
+  });
+
+  it('leaves out a net that is not finished, and leads to it', async () => {
+    await picker('Spillway axis').selectOption({ label: 'Begun' });
+    await page.getByText('The total is worked out without Spillway axis.').waitFor();
+    const remark = page.getByRole('row', { name: /^Left out/ });
+    const link = remark.getByRole('link', { name: 'Open the net' });
+    expect(await link.getAttribute('href')).toBe(`/nets/${further.begun}`);
+    await picker('Spillway axis').selectOption({ label: 'not chosen' });
+    await remark.waitFor({ state: 'detached' });
+  });
+
   it('is downloaded as CSV as it is shown', async () => {
     const [download] = await Promise.all([
       page.waitForEvent('download'),
@@ -120,7 +141,7 @@ describe('the seepage along a dam', () => {
   });
 
   it('opens for a shared address as it was chosen, and leads out of one that names something else', async () => {
-    browser.expectConsoleError(/status of 404/);
+    browser.expectConsoleError(/status of 404.*\/seepage\?nets=.*\)$/);
     await page.reload();
     await totalRow().waitFor();
     const flood = await picker('Section C–C').inputValue();
