@@ -6,6 +6,7 @@ import { independentSolution } from './independent-bench.ts';
 import { panFrame } from './pan-frame.ts';
 import { fieldSolve, readingError, reread200, wholeNet60 } from './reading-bench.ts';
 import { scheduleApi } from './schedule-api.ts';
+import { sheetPdf } from './sheet-pdf.ts';
 import { tableOf } from './table.ts';
 import { uploadGroupFour, uploadJpeg } from './upload-a1.ts';
 
@@ -21,6 +22,7 @@ const benches: readonly Bench[] = [
   wholeNet60,
   fieldSolve,
   readingError,
+  sheetPdf,
 ];
 
 const { values: options } = parseArgs({
