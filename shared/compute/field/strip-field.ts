@@ -33,6 +33,8 @@ export type StripField = {
 const SOLVED_TO = 1e-8;
 /** Steps of conjugate gradients; the strips of most nets take a hundred or two. */
 const MOST_STEPS = 500;
+/** With as many unknowns the steps are many and each is dear: then the equations are solved directly from the start. */
+const MANY_UNKNOWNS = 6000;
 
 /**
  * The head between two neighbouring equipotentials that satisfies ∇·(K∇h) = 0 with both lines held at their heads,
@@ -51,9 +53,8 @@ export function solveStrip(
   if (mesh === null || mesh.triangles.length === 0) return null;
   const held = heldHeads(mesh, heads);
   const system = systemOf(mesh, stiffnessOf(mesh, tensorAt), held);
-  const guess = new Float64Array(system.rows.n).fill(meanOf(held));
-  const iterated = conjugateGradient(system.rows, system.right, guess, SOLVED_TO, MOST_STEPS);
-  const x = iterated.converged ? iterated.x : solveDirectly(mesh, system);
+  const x =
+    (system.rows.n < MANY_UNKNOWNS ? iterate(system, meanOf(held)) : null) ?? solveDirectly(mesh, system);
   if (x === null) return null;
   const atCorners = Float64Array.from(mesh.unknowns, (unknown) => {
     const row = system.rowOf[unknown]!;
@@ -62,7 +63,13 @@ export function solveStrip(
   return { unknowns: system.rows.n, at: placesOf(mesh, atCorners) };
 }
 
-/** Where the water has a long way round walls, the steps would be many: then the equations are solved directly. */
+/** Null where the steps do not come to rest, as where the water has a long way round walls. */
+function iterate({ rows, right }: StripSystem, head: number): Float64Array | null {
+  const guess = new Float64Array(rows.n).fill(head);
+  const { x, converged } = conjugateGradient(rows, right, guess, SOLVED_TO, MOST_STEPS);
+  return converged ? x : null;
+}
+
 function solveDirectly(mesh: StripMesh, { rows, right, rowOf }: StripSystem): Float64Array | null {
   const x = new Float64Array(rows.n);
   const y = new Float64Array(rows.n);
