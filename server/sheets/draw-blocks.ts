@@ -44,7 +44,7 @@ function drawItem(flow: PageFlow, item: string): void {
 
 /** Labels at the left, values at the right of them, both broken into lines. */
 function drawFacts(flow: PageFlow, rows: readonly SheetFact[]): void {
-  const labelWidth = flow.widthPt * 0.34;
+  const labelWidth = flow.widthPt * 0.3;
   for (const { label, value } of rows) {
     const left = textLines(flow.fonts, label, 'plain', TEXT_PT, labelWidth - 8);
     const right = textLines(flow.fonts, value, 'plain', TEXT_PT, flow.widthPt - labelWidth);

@@ -146,7 +146,8 @@ function drawTraces(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlac
       .moveTo(x, y - 4)
       .lineTo(x, y + 4)
       .stroke();
-    labelAt(doc, say, name, [x, y], INK);
+    // Below, since heads of lines that end at a known point stand above.
+    labelAt(doc, say, name, [x, y + 2 * LABEL_PT], INK);
   }
   for (const { name, at } of figure.points) {
     const [x, y] = on(at);

@@ -34,4 +34,8 @@ export function doubtChapter({ reading }: SheetSource): SheetChapter | null {
 }
 
 const sharesText = (shares: DoubtShares) =>
-  shares.map(({ source, part }) => `${DOUBT_NAMES[source]} ${Math.round(part * 100)} %`).join(', ');
+  shares
+    .map(
+      ({ source, part }) => `${DOUBT_NAMES[source]} ${part < 0.005 ? 'below 1' : Math.round(part * 100)} %`,
+    )
+    .join(', ');

@@ -6,7 +6,7 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import { renderSheetPdf } from '#server/sheets/render-sheet-pdf.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { type SheetSource, sheetContent } from '#shared/text/calculation-sheet/content.ts';
-import { plusMinusText } from '#shared/text/number-text.ts';
+import { fixedText, plainText, plusMinusText } from '#shared/text/number-text.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 import { randomReadings } from '#tests/support/exact-nets/random-readings.ts';
@@ -166,6 +166,39 @@ describe('other calculation sheets', () => {
     const page = await (await open(await render(source(), 'A3'))).getPage(1);
     const { width, height } = page.getViewport({ scale: 25.4 / 72 });
     expect([Math.round(width), Math.round(height)]).toEqual([420, 297]);
+  });
+
+  it('print each sample of a profile and the uplift on it', async () => {
+    const id = '01890000-0000-7000-8000-0000000000ff';
+    const ends = [
+      [-10, 100],
+      [8, 100],
+    ] as Array<[number, number]>;
+    const value = {
+      kind: 'profile',
+      name: 'Underside',
+      use: 'base',
+      place: { on: 'section', points: ends },
+      spacing: 2,
+      finished: true,
+      order: 1,
+    } as const;
+    const withProfile = {
+      ...document,
+      entities: { ...document.entities, [id]: { id, version: 1, value } },
+    };
+    const read = readNet(withProfile);
+    const pdf = await render(source({ document: withProfile, reading: read }));
+    keep('profile.pdf', pdf);
+    const text = (await textsOf(await open(pdf))).join(' ');
+    const [profile] = read.profiles;
+    const pressures = profile!.samples.flatMap(({ porePressure }) =>
+      porePressure === null ? [] : [porePressure],
+    );
+    expect(pressures.length).toBeGreaterThan(5);
+    for (const pressure of pressures) expect(text).toContain(fixedText(pressure, 1));
+    expect(profile!.uplift?.total).not.toBeNull();
+    expect(text).toContain(`${plainText(profile!.uplift!.total!.vertical)} kN per m upwards`);
   });
 
   it('are made of a net with nothing on it too', async () => {
