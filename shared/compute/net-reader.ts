@@ -1,10 +1,20 @@
 import { FieldMemory } from '#shared/compute/field/field-memory.ts';
-import { readNet } from '#shared/compute/read-net.ts';
+import { type KeptNet, readAndKeep } from '#shared/compute/read-net.ts';
+import { type PointsRead, rereadPoints } from '#shared/compute/reread-points.ts';
 import type { FlowNetDocument, VersionedEntity } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
 /** Reads one net again and again while it is worked on. */
-export type NetReader = { read(document: FlowNetDocument): NetReading };
+export type NetReader = {
+  /** The whole reading, that of `readNet`. */
+  read(document: FlowNetDocument): NetReading;
+  /**
+   * The points ahead of the whole reading, which is to follow; see `rereadPoints`. Null when more has changed since the
+   * last whole reading than reading points and the vertices of one equipotential. Takes no document for another that
+   * was changed in place.
+   */
+  readPoints(document: FlowNetDocument): PointsRead | null;
+};
 
 /**
  * A reader that remembers what it read: lines that are the same to the last bit are not smoothed and measured again,
@@ -13,19 +23,54 @@ export type NetReader = { read(document: FlowNetDocument): NetReading };
  */
 export function createNetReader(): NetReader {
   const memory = new FieldMemory();
-  let last: FlowNetDocument['entities'] = {};
+  let last: FlowNetDocument | null = null;
+  let kept: KeptNet = null;
   return {
     read(document) {
-      const entities = Object.fromEntries(
-        Object.entries(document.entities).map(([id, entity]) => [id, sameAsBefore(entity, last[id])]),
-      );
-      last = entities;
-      return readNet({ ...document, entities }, memory);
+      const now = likeBefore(document, last);
+      const read = readAndKeep(now, memory);
+      last = now;
+      kept = read.kept;
+      return read.reading;
+    },
+    readPoints(document) {
+      if (last === null || kept === null) return null;
+      const now = likeBefore(document, last);
+      const change = smallChange(last, now);
+      return change && rereadPoints(now, change.moved, kept, memory);
     },
   };
 }
 
-/** The entity with the value it had before where that is equal: what is kept for it is then found again. */
+/** What of a net has changed when it is no more than reading points and the vertices of at most one equipotential. */
+function smallChange(before: FlowNetDocument, now: FlowNetDocument): { moved: string | null } | null {
+  if (!equalValues({ ...before, entities: null }, { ...now, entities: null })) return null;
+  const ids = new Set([...Object.keys(before.entities), ...Object.keys(now.entities)]);
+  let moved: string | null = null;
+  for (const id of ids) {
+    const [from, to] = [before.entities[id]?.value, now.entities[id]?.value];
+    if (from === to || [from, to].every((value) => value === undefined || value.kind === 'readingPoint')) {
+      continue;
+    }
+    if (moved !== null || !isMovedEquipotential(from, to)) return null;
+    moved = id;
+  }
+  return { moved };
+}
+
+function isMovedEquipotential(from: VersionedEntity['value'] | undefined, to: typeof from): boolean {
+  if (from?.kind !== 'line' || to?.kind !== 'line') return false;
+  return from.line === 'equipotential' && equalValues({ ...from, points: null }, { ...to, points: null });
+}
+
+/** The document with every entity that is equal to one of before as it was: what is kept for it is then found again. */
+function likeBefore(document: FlowNetDocument, before: FlowNetDocument | null): FlowNetDocument {
+  const entities = Object.entries(document.entities).map(
+    ([id, entity]) => [id, sameAsBefore(entity, before?.entities[id])] as const,
+  );
+  return { ...document, entities: Object.fromEntries(entities) };
+}
+
 function sameAsBefore(entity: VersionedEntity, before: VersionedEntity | undefined): VersionedEntity {
   if (before === undefined || !equalValues(entity.value, before.value)) return entity;
   return { ...entity, value: before.value };

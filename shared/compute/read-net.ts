@@ -15,7 +15,7 @@ import { quantitiesOf } from '#shared/compute/net/quantities.ts';
 import { type PlacedPoint, readPoint, withholdPoint } from '#shared/compute/net/read-point.ts';
 import { findTangles } from '#shared/compute/net/tangles.ts';
 import { phreaticOnSheet } from '#shared/compute/phreatic/read-phreatic.ts';
-import { placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
+import { type PreparedNet, placedPoints, prepareNet } from '#shared/compute/prepare-net.ts';
 import { profilesRead } from '#shared/compute/profiles/read-profiles.ts';
 import { exitsRead } from '#shared/compute/quantities/exits.ts';
 import { NO_STABILITY, stabilityRead } from '#shared/compute/quantities/stability.ts';
@@ -35,12 +35,29 @@ import type { Finding, LineReading, NetReading, PointReading } from '#shared/con
  * spares work that an earlier reading has done and alters no figure.
  */
 export function readNet(document: FlowNetDocument, memory: FieldMemory | null = null): NetReading {
-  const reading = readLines(document, memory);
-  return { ...reading, measured: compareMeasured(document, reading.points) };
+  return readAndKeep(document, memory).reading;
+}
+
+/** Each reading point as the net alone tells it, in the working frame, before the findings of the whole net. */
+export type PointsByNet = ReadonlyMap<
+  string,
+  { readonly point: PlacedPoint; readonly reading: PointReading }
+>;
+
+/** What a reading was worked out from; null where the net gives no figure. */
+export type KeptNet = { readonly prepared: PreparedNet; readonly points: PointsByNet } | null;
+
+/** As `readNet`, with what a later reading may be built on. */
+export function readAndKeep(
+  document: FlowNetDocument,
+  memory: FieldMemory | null,
+): { reading: NetReading; kept: KeptNet } {
+  const { kept, ...reading } = readLines(document, memory);
+  return { reading: { ...reading, measured: compareMeasured(document, reading.points) }, kept };
 }
 
 /** All that is read off the lines, before it is held against what was measured. */
-type LinesRead = Omit<NetReading, 'measured'>;
+type LinesRead = Omit<NetReading, 'measured'> & { readonly kept: KeptNet };
 
 function readLines(document: FlowNetDocument, memory: FieldMemory | null): LinesRead {
   const inputs = singleInputs(document);
@@ -80,6 +97,7 @@ function withoutNet(
     profiles: profilesRead(document, null, null),
     exits: [],
     stability: NO_STABILITY,
+    kept: null,
   };
 }
 
@@ -91,21 +109,14 @@ function readOnSection(
   memory: FieldMemory | null,
 ): LinesRead {
   const prepared = prepareNet(document, setOut, map, inputs, memory);
-  const { frame, model, heads, ground, quantities, findings, finished } = prepared;
-  const points = placedPoints(prepared.working, frame.map);
-  const extent = extentOf(model.lines, frame.map);
+  const { frame, model, heads, quantities, findings, finished } = prepared;
+  const byNet = finished ? pointsByNet(prepared, (point) => readPoint(point, prepared.ground)) : null;
   return {
     state: finished ? 'read' : 'unfinished',
     findings: [...findings],
     setOut: setOut.reading,
     lines: linesRead(model, heads),
-    points: points.map((point) => {
-      const reading = finished
-        ? markWide(readPoint(point, ground), prepared.wide)
-        : withheldBy(point, findings);
-      const far = questionPlace(point, extent, document.unitSystem);
-      return pointOnSheet({ ...reading, findings: [...reading.findings, ...far] }, frame);
-    }),
+    points: pointsOnSheet(document, prepared, byNet),
     quantities,
     phreatic: phreaticOnSheet(prepared.phreatic, frame),
     frame: frameReadingOf(frame, map),
@@ -115,7 +126,37 @@ function readOnSection(
     profiles: profilesRead(document, prepared, inputs.water.tailwater),
     exits: exitsRead(prepared),
     stability: stabilityRead(prepared),
+    kept: byNet && { prepared, points: byNet },
   };
+}
+
+/** The points of a net, each read by `read`. */
+export function pointsByNet(
+  { working, frame }: PreparedNet,
+  read: (point: PlacedPoint) => PointReading,
+): PointsByNet {
+  return new Map(
+    placedPoints(working, frame.map).map((point) => [point.id, { point, reading: read(point) }]),
+  );
+}
+
+/**
+ * The points of a net in the order of the schedule, with what the whole net says of each, places on the sheet. Without
+ * `byNet` none has a figure.
+ */
+export function pointsOnSheet(
+  document: FlowNetDocument,
+  prepared: PreparedNet,
+  byNet: PointsByNet | null,
+): PointReading[] {
+  const { working, frame, model, findings, wide } = prepared;
+  const extent = extentOf(model.lines, frame.map);
+  return placedPoints(working, frame.map).map((point) => {
+    const read = byNet?.get(point.id)?.reading;
+    const reading = read === undefined ? withheldBy(point, findings) : markWide(read, wide);
+    const far = questionPlace(point, extent, document.unitSystem);
+    return pointOnSheet({ ...reading, findings: [...reading.findings, ...far] }, frame);
+  });
 }
 
 /** A reading made in the working frame, with its places on the sheet. */

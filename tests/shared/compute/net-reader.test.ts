@@ -2,7 +2,8 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { createNetReader } from '#shared/compute/net-reader.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
 import { arbitraryDocument } from '#tests/support/arbitrary-document.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
@@ -95,5 +96,106 @@ describe('a reader that remembers', () => {
       }),
       { numRuns: 60 },
     );
+  });
+});
+
+/** One vertex of an equipotential dragged. */
+const drag = fc.record({
+  line: fc.nat(1000),
+  vertex: fc.nat(1000),
+  dx: fc.double({ min: -9, max: 9, noNaN: true }),
+  dy: fc.double({ min: -9, max: 9, noNaN: true }),
+});
+
+type Drag = typeof drag extends fc.Arbitrary<infer T> ? T : never;
+
+function dragged(document: FlowNetDocument, { line, vertex, dx, dy }: Drag): FlowNetDocument {
+  const copy = structuredClone(document);
+  const lines = Object.values(copy.entities).flatMap(({ value }) =>
+    value.kind === 'line' && value.line === 'equipotential' ? [value] : [],
+  );
+  const { points } = lines[line % lines.length]!;
+  const [x, y] = points[vertex % points.length]!;
+  points[vertex % points.length] = [x + dx, y + dy];
+  return copy;
+}
+
+/** The whole net has its own say on a line that seems to be missing; all else is told of the point itself. */
+function byThemselves(points: NetReading['points']): NetReading['points'] {
+  const isOfWhole = ({ code }: { code: string }) => code.startsWith('lineMissing');
+  return points.map((point) => ({ ...point, findings: point.findings.filter((found) => !isOfWhole(found)) }));
+}
+
+describe('points ahead of the whole reading', () => {
+  it.each(EXACT_NETS)(
+    'are those of the whole reading after a vertex is dragged: $name',
+    ({ net, pxPerUnit }) => {
+      const readings = randomReadings(net, 40, 7);
+      const traced = exactNetDocument(net, { pxPerUnit, readings, jitterPx: 1.5 });
+      const before = readNet(traced);
+      const reader = createNetReader();
+      reader.read(traced);
+      let ahead = 0;
+      fc.assert(
+        fc.property(drag, (each) => {
+          const document = dragged(traced, each);
+          const read = reader.readPoints(document);
+          const whole = readNet(structuredClone(document));
+          if (read === null || whole.state !== 'read') return;
+          if (JSON.stringify(whole.lines) !== JSON.stringify(before.lines)) return;
+          ahead += 1;
+          expect(byThemselves(read.points)).toEqual(byThemselves(whole.points));
+          expect(read.measured).toEqual(whole.measured);
+        }),
+        { numRuns: 15 },
+      );
+      expect(ahead).toBeGreaterThan(7);
+    },
+  );
+
+  it('follow a reading point that is moved, added or taken away', () => {
+    const { net, pxPerUnit } = EXACT_NETS[0]!;
+    const traced = exactNetDocument(net, { pxPerUnit, readings: randomReadings(net, 12, 7), jitterPx: 1.5 });
+    const reader = createNetReader();
+    reader.read(traced);
+    const ids = Object.values(traced.entities).flatMap(({ id, value }) =>
+      value.kind === 'readingPoint' ? [id] : [],
+    );
+    const without = structuredClone(traced);
+    delete without.entities[ids[3]!];
+    const moved = structuredClone(without);
+    const point = moved.entities[ids[5]!]!.value;
+    if (point.kind !== 'readingPoint' || point.place.on !== 'section') throw new Error('Readings are typed.');
+    point.place.offset += 0.3;
+    for (const document of [without, moved, traced]) {
+      expect(reader.readPoints(document)).toMatchObject({
+        points: readNet(structuredClone(document)).points,
+      });
+    }
+  });
+
+  it('are not given when more has changed, nor before a whole reading', () => {
+    const { net, pxPerUnit } = EXACT_NETS[0]!;
+    const traced = exactNetDocument(net, { pxPerUnit, readings: randomReadings(net, 5, 7), jitterPx: 1.5 });
+    const reader = createNetReader();
+    expect(reader.readPoints(traced)).toBeNull();
+    reader.read(traced);
+    const alter = (change: (value: DocumentEntity) => void) => {
+      const document = structuredClone(traced);
+      for (const { value } of Object.values(document.entities)) change(value);
+      return reader.readPoints(document);
+    };
+    expect(alter(() => undefined)?.points).toEqual(readNet(traced).points);
+    const headwaterUp = alter((value) => {
+      if (value.kind === 'waterLevels') value.headwater = (value.headwater ?? 0) + 1;
+    });
+    const allReversed = alter((value) => {
+      if (value.kind === 'line') value.points.reverse();
+    });
+    const tracedWorse = alter((value) => {
+      if (value.kind === 'netCount') value.tracingAccuracyPx = 3;
+    });
+    expect([headwaterUp, allReversed, tracedWorse]).toEqual([null, null, null]);
+    expect(reader.readPoints({ ...traced, datum: 'another' })).toBeNull();
   });
 });

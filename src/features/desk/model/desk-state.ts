@@ -42,6 +42,8 @@ export type DeskState = {
   /** Reading of the document of revision `readingOf`; null until the first is worked out. */
   readonly reading: NetReading | null;
   readonly readingOf: number;
+  /** Revision of which the reading points are: they may be read ahead of the rest. */
+  readonly pointsOf: number;
   /** True when the last attempt to read failed; the reading shown is then older than the document. */
   readonly readingFailed: boolean;
   readonly tool: ToolId;

@@ -27,6 +27,7 @@ function firstState(opened: Opened, options: DeskStoreOptions): DeskState {
     changeNumber: opened.changeNumber ?? 0,
     reading: options.reading ?? null,
     readingOf: options.reading === undefined ? -1 : 0,
+    pointsOf: options.reading === undefined ? -1 : 0,
     readingFailed: false,
     tool: 'select',
     boundaryKind: 'headwaterFace',
@@ -54,7 +55,14 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
 
   const endAnswers = options.reader?.onAnswer((revision, reading) => {
     if (reading === null) store.setState({ readingFailed: true });
-    else store.setState({ reading, readingOf: revision, readingFailed: false });
+    else store.setState({ reading, readingOf: revision, pointsOf: revision, readingFailed: false });
+  });
+  const endPoints = options.reader?.onPoints((revision, ahead) => {
+    const { reading, documentRevision } = store.getState();
+    // Points of a document that has changed again are not shown over those of another.
+    if (reading !== null && revision === documentRevision) {
+      store.setState({ reading: { ...reading, ...ahead }, pointsOf: revision });
+    }
   });
   options.reader?.ask(opened.document, 0);
 
@@ -139,6 +147,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     newId: options.newId ?? newUuid,
     close() {
       endAnswers?.();
+      endPoints?.();
       options.reader?.close();
       commands.clear();
       intents.clear();

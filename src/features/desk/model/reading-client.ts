@@ -1,11 +1,12 @@
+import type { PointsRead } from '#shared/compute/reread-points.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { ReadingPort } from './reading-port.ts';
-import type { ReadingAnswer, ReadingQuestion } from './reading-worker.ts';
+import type { PointsAhead, ReadingAnswer, ReadingQuestion } from './reading-worker.ts';
 
 /** The part of a Worker that is used, so that the client's order of questions can be tested without a browser. */
 export type WorkerLike = {
   postMessage(question: ReadingQuestion): void;
-  onmessage: ((event: MessageEvent<ReadingAnswer>) => void) | null;
+  onmessage: ((event: MessageEvent<ReadingAnswer | PointsAhead>) => void) | null;
   onerror: ((event: ErrorEvent) => void) | null;
   terminate(): void;
 };
@@ -20,6 +21,7 @@ function startWorker(): WorkerLike {
  */
 export function createReadingClient(start: () => WorkerLike = startWorker): ReadingPort {
   const listeners = new Set<(revision: number, reading: NetReading | null) => void>();
+  const aheadListeners = new Set<(revision: number, points: PointsRead) => void>();
   let worker: WorkerLike | null = null;
   let underWay: ReadingQuestion | null = null;
   let next: ReadingQuestion | null = null;
@@ -39,7 +41,10 @@ export function createReadingClient(start: () => WorkerLike = startWorker): Read
 
   function prepared(): WorkerLike {
     const fresh = start();
-    fresh.onmessage = (event) => answer(event.data.revision, event.data.reading);
+    fresh.onmessage = ({ data }) => {
+      if ('reading' in data) answer(data.revision, data.reading);
+      else for (const listener of aheadListeners) listener(data.revision, data.points);
+    };
     fresh.onerror = () => {
       fresh.terminate();
       worker = null;
@@ -58,8 +63,13 @@ export function createReadingClient(start: () => WorkerLike = startWorker): Read
       listeners.add(listener);
       return () => listeners.delete(listener);
     },
+    onPoints(listener) {
+      aheadListeners.add(listener);
+      return () => aheadListeners.delete(listener);
+    },
     close() {
       listeners.clear();
+      aheadListeners.clear();
       next = null;
       worker?.terminate();
       worker = null;

@@ -1,3 +1,4 @@
+import type { PointsRead } from '#shared/compute/reread-points.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
@@ -10,5 +11,7 @@ export type ReadingPort = {
   ask(document: FlowNetDocument, revision: number): void;
   /** Is told each answer; a failure carries no reading. Gives a function that ends it. */
   onAnswer(listener: (revision: number, reading: NetReading | null) => void): () => void;
+  /** Is told the points where they are read ahead of the answer that follows. Gives a function that ends it. */
+  onPoints(listener: (revision: number, points: PointsRead) => void): () => void;
   close(): void;
 };

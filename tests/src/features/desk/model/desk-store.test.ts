@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { DeskCommand } from '#client/features/desk/model/desk-state.ts';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
 import type { ReadingPort } from '#client/features/desk/model/reading-port.ts';
+import { readNet } from '#shared/compute/read-net.ts';
 import type { DocumentEntity } from '#shared/contract/document.ts';
 import type { ChangesDto } from '#shared/contract/nets.ts';
 import {
@@ -229,12 +230,15 @@ describe('working beside others', () => {
   });
 });
 
+type Told<K extends 'onPoints' | 'onAnswer'> = Parameters<ReadingPort[K]>[0];
+
 describe('reading', () => {
   it('asks again after each change of a value, and not after an acknowledgement', () => {
     const asked: number[] = [];
     const reader: ReadingPort = {
       ask: (_document, revision) => asked.push(revision),
       onAnswer: () => () => undefined,
+      onPoints: () => () => undefined,
       close: () => undefined,
     };
     const { store } = deskWith({ [LINE_A]: shortLine }, { reader });
@@ -242,5 +246,36 @@ describe('reading', () => {
     store.acknowledge([appliedAt(LINE_A, 2)], 1);
     expect(asked).toEqual([0, 1]);
     expect(store.getState()).toMatchObject({ documentRevision: 1, readingOf: -1 });
+  });
+
+  it('shows points read ahead as long as no newer document has come, and the rest as of before', () => {
+    const told: { points?: Told<'onPoints'>; whole?: Told<'onAnswer'> } = {};
+    const reader: ReadingPort = {
+      ask: () => undefined,
+      onAnswer: (listener) => {
+        told.whole = listener;
+        return () => undefined;
+      },
+      onPoints: (listener) => {
+        told.points = listener;
+        return () => undefined;
+      },
+      close: () => undefined,
+    };
+    const { store } = deskWith({ [LINE_A]: shortLine }, { reader });
+    const reading = readNet(store.getState().document);
+    const ahead = { points: [...reading.points], measured: [...reading.measured] };
+    told.points?.(0, ahead);
+    expect(store.getState()).toMatchObject({ reading: null, pointsOf: -1 });
+    told.whole?.(0, reading);
+    store.run('move', [{ op: 'put', entityId: LINE_A, value: longLine }]);
+    told.points?.(0, ahead);
+    expect(store.getState().reading).toBe(reading);
+    told.points?.(1, ahead);
+    expect(store.getState()).toMatchObject({ documentRevision: 1, readingOf: 0, pointsOf: 1 });
+    expect(store.getState().reading?.points).toBe(ahead.points);
+    expect(store.getState().reading?.findings).toBe(reading.findings);
+    told.whole?.(1, reading);
+    expect(store.getState()).toMatchObject({ reading, readingOf: 1, pointsOf: 1 });
   });
 });

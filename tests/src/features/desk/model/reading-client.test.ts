@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { createReadingClient, type WorkerLike } from '#client/features/desk/model/reading-client.ts';
-import type { ReadingAnswer } from '#client/features/desk/model/reading-worker.ts';
+import type { PointsAhead, ReadingAnswer } from '#client/features/desk/model/reading-worker.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { documentWith } from '#tests/support/desk/desk-fixture.ts';
 
@@ -56,5 +56,22 @@ describe('reading in a worker', () => {
       [1, false],
       [2, true],
     ]);
+  });
+
+  it('tells the points ahead of the reading and goes on waiting for it', () => {
+    const { worker, questions, answerAll } = heldWorker();
+    const client = createReadingClient(() => worker);
+    const told: string[] = [];
+    client.onPoints((revision) => told.push(`points ${revision}`));
+    client.onAnswer((revision) => told.push(`whole ${revision}`));
+    client.ask(documentWith({}), 1);
+    client.ask(documentWith({}), 2);
+    const { points, measured } = readNet(documentWith({}));
+    const data: PointsAhead = { revision: 1, points: { points, measured } };
+    worker.onmessage?.({ data } as MessageEvent<PointsAhead>);
+    expect(questions).toEqual([1]);
+    answerAll();
+    expect(told).toEqual(['points 1', 'whole 1']);
+    expect(questions).toEqual([1, 2]);
   });
 });
