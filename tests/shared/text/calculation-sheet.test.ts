@@ -1,0 +1,82 @@
+import { describe, expect, it } from 'vitest';
+import { readNet } from '#shared/compute/read-net.ts';
+import type { NoteDto } from '#shared/contract/notes.ts';
+import { notesUntil } from '#shared/text/calculation-sheet/record.ts';
+import { lowered, powerText, raised, richRuns } from '#shared/text/calculation-sheet/rich-text.ts';
+import { sectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
+import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
+import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
+
+describe('texts with raised and lowered runs', () => {
+  it('come apart into their runs', () => {
+    expect(richRuns(`k${lowered('h')} = 10${raised('−6')} m/s`)).toEqual([
+      { text: 'k', level: 'line' },
+      { text: 'h', level: 'lowered' },
+      { text: ' = 10', level: 'line' },
+      { text: '−6', level: 'raised' },
+      { text: ' m/s', level: 'line' },
+    ]);
+    expect(powerText(2e-6, 2)).toBe(`2.0 × 10${raised('−6')}`);
+    expect(powerText(null, 2)).toBe('–');
+  });
+
+  it('leave what a person wrote alone', () => {
+    expect(richRuns('a^{2}_b <sup>')).toEqual([{ text: 'a^{2}_b <sup>', level: 'line' }]);
+  });
+});
+
+describe('notes up to a moment', () => {
+  const person = { id: '01890000-0000-7000-8000-000000000001', name: 'Tove Lind' };
+  const note: NoteDto = {
+    id: '01890000-0000-7000-8000-000000000002',
+    netId: '01890000-0000-7000-8000-000000000003',
+    number: 1,
+    anchor: { on: 'place', at: [1, 1] },
+    state: 'closed',
+    createdAt: '2026-01-01T00:00:00.000Z',
+    closedBy: person,
+    closedAt: '2026-01-04T00:00:00.000Z',
+    entries: [
+      { id: 'a', author: person, text: 'Why?', at: '2026-01-01T00:00:00.000Z' },
+      { id: 'b', author: person, text: 'So.', at: '2026-01-03T00:00:00.000Z' },
+    ],
+  };
+
+  it('stand as they stood then', () => {
+    expect(notesUntil([note], '2025-12-31T00:00:00.000Z')).toEqual([]);
+    expect(notesUntil([note], '2026-01-02T00:00:00.000Z')).toMatchObject([
+      { state: 'open', closedAt: null, entries: [{ id: 'a' }] },
+    ]);
+    expect(notesUntil([note], '2026-01-03T00:00:00.000Z')).toMatchObject([{ state: 'answered' }]);
+    expect(notesUntil([note], '2026-01-05T00:00:00.000Z')).toEqual([note]);
+  });
+});
+
+describe('the figure of the section', () => {
+  const { net, pxPerUnit } = EXACT_NETS[0]!;
+  const turn = (mirrored: boolean) => {
+    const document = exactNetDocument(net, { pxPerUnit, mirrored });
+    return { document, figure: sectionFigure(document, readNet(document))! };
+  };
+
+  it('shows every trace within the sheet and a bar of the set-out scale', () => {
+    const { document, figure } = turn(false);
+    const [left, top, width, height] = figure.crop;
+    for (const [x, y] of figure.lines.flatMap((line) => line.points)) {
+      expect(x).toBeGreaterThanOrEqual(left);
+      expect(x).toBeLessThanOrEqual(left + width);
+      expect(y).toBeGreaterThanOrEqual(top);
+      expect(y).toBeLessThanOrEqual(top + height);
+    }
+    expect(left + width).toBeLessThanOrEqual(document.sheet.widthPx);
+    const [bar, ...others] = figure.scaleBars;
+    expect(others).toEqual([]);
+    // The document is drawn at so many pixels to the metre.
+    expect(bar!.lengthPx / Number.parseFloat(bar!.label)).toBeCloseTo(pxPerUnit, 3);
+  });
+
+  it('turns the direction of flow with the drawing', () => {
+    const sides = [turn(false).figure.flow, turn(true).figure.flow];
+    expect(sides.sort()).toEqual(['left', 'right']);
+  });
+});
