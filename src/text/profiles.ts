@@ -72,6 +72,7 @@ export const profileText = {
   labels: {
     began: 'began a profile',
     added: 'added a point to a profile',
+    moved: (name: string) => `moved a point of ${name || 'a profile'}`,
     tookBack: 'took back a point of a profile',
     abandoned: 'removed an unfinished profile',
     finished: (name: string) => `drew ${name}`,

@@ -1,7 +1,6 @@
 import { permeabilityText as text } from '#client/text/desk-forms.ts';
 import { singleOf } from '#shared/contract/document.ts';
 import type { DeskFormProps } from './desk-form.ts';
-import { FlowUnitField } from './flow-unit-field.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
 import { SoilFields, type SoilProperties } from './soil-fields.tsx';
 import { SoilList } from './soil-list.tsx';
@@ -23,7 +22,6 @@ export function PermeabilityForm({ newId, onOpenSoil, ...form }: PermeabilityFor
       <p className="m-0 text-ink-2">{text.lead}</p>
       <FormFindings findings={findingsFor(reading?.findings, 'permeability', 'seepage')} />
       <SoilFields soil={held.value} unitSystem={document.unitSystem} disabled={disabled} change={change} />
-      <FlowUnitField unitSystem={document.unitSystem} />
       <SoilList document={document} disabled={disabled} run={run} newId={newId} onOpenSoil={onOpenSoil} />
     </FormPane>
   );

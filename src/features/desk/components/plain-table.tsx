@@ -45,7 +45,7 @@ export function PlainTable({
                 className={classNames(
                   'border-b border-rule-2 px-2 py-[3px]',
                   columns[i]!.words
-                    ? 'min-w-24 text-left text-sm last:min-w-80'
+                    ? 'min-w-24 text-left text-sm last:min-w-56'
                     : 'text-right whitespace-nowrap',
                 )}
               >

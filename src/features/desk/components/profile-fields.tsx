@@ -22,7 +22,7 @@ export function ProfileFields({ store, id, profile, profiles, onChoose }: Profil
   const { length } = unitNames(store.getState().document.unitSystem);
   const take = (edit: ProfileEdit) => store.run(edit.label, edit.ops);
   return (
-    <div className="sticky left-0 flex flex-wrap items-end gap-x-3 gap-y-2 px-2.5 pb-2 [&>div]:w-32 [&>div:last-of-type]:w-52">
+    <div className="sticky left-0 flex flex-wrap items-end gap-x-3 gap-y-2 px-2.5 pb-2 [&>div]:w-32 [&>div:nth-last-of-type(2)]:w-44 [&>div:last-of-type]:w-52">
       {profiles.length > 1 ? (
         <SelectField label={text.chosen} value={id} onChange={(event) => onChoose(event.target.value)}>
           {profiles.map((each) => (

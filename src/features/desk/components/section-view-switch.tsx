@@ -16,28 +16,31 @@ export function SectionViewSwitch({ store, views }: { store: DeskStore; views: V
   const shown = offered.has(asked) ? asked : 'sheet';
   const map = offered.get(shown) ?? null;
   useEffect(() => views.seeAs(map), [views, map]);
-  if (frame?.kind === 'none') return <Remark>{text.noCommon}</Remark>;
-  if (offered.size < 2) return null;
+  const remark = frame?.kind === 'none' ? <Remark>{text.noCommon}</Remark> : null;
+  if (offered.size < 2) return remark;
   const isDrawnTransformed = frame?.kind === 'transformed' && !offered.has('transformed');
   return (
-    <fieldset data-over-sheet className="m-0 flex rounded-sheet border border-rule bg-film p-0">
-      <legend className="sr-only">{text.title}</legend>
-      {[...offered.keys()].map((view) => (
-        <button
-          key={view}
-          type="button"
-          aria-pressed={view === shown}
-          title={view === 'sheet' && isDrawnTransformed ? text.drawnTransformed : text.titles[view]}
-          className={classNames(
-            'touch border-0 px-2.5 py-1 leading-[1.4] hover:bg-hover',
-            view === shown ? 'bg-chosen font-semibold' : 'bg-transparent',
-          )}
-          onClick={() => setAsked(view)}
-        >
-          {text.views[view]}
-        </button>
-      ))}
-    </fieldset>
+    <>
+      {remark}
+      <fieldset data-over-sheet className="m-0 flex rounded-sheet border border-rule bg-film p-0">
+        <legend className="sr-only">{text.title}</legend>
+        {[...offered.keys()].map((view) => (
+          <button
+            key={view}
+            type="button"
+            aria-pressed={view === shown}
+            title={view === 'sheet' && isDrawnTransformed ? text.drawnTransformed : text.titles[view]}
+            className={classNames(
+              'touch border-0 px-2.5 py-1 leading-[1.4] hover:bg-hover',
+              view === shown ? 'bg-chosen font-semibold' : 'bg-transparent',
+            )}
+            onClick={() => setAsked(view)}
+          >
+            {text.views[view]}
+          </button>
+        ))}
+      </fieldset>
+    </>
   );
 }
 

@@ -181,17 +181,23 @@ function pointItem({ id, value }: Shown, input: SceneInput): SceneMark[] {
   return [mark(id, 'readingPoint', [at[0], at[1]], COLOURS.point, { text: value.name, strong })];
 }
 
-/** Handles on the vertices of the one chosen line and of the line under way. */
+/** Handles on the vertices of the one chosen line or profile and of the line under way. */
 function handleItems(shown: readonly Shown[], input: SceneInput): SceneMark[] {
   if (input.readOnly) return [];
   const { selection } = input;
   const id =
     input.draftId ?? (selection.kind === 'line' && selection.ids.length === 1 ? selection.ids[0] : undefined);
   const line = shown.find((entity) => entity.id === id)?.value;
+  if (selection.kind === 'profile') return shown.flatMap((entity) => profileHandles(entity, input));
   if (id === undefined || line?.kind !== 'line') return [];
   return line.points.map((at, i) =>
     handleOf(id, line, at, i, selection.vertex === i && input.draftId === null),
   );
+}
+
+function profileHandles({ id, value }: Shown, input: SceneInput): SceneMark[] {
+  if (!isChosen(id, input) || value.kind !== 'profile' || value.place.on !== 'sheet') return [];
+  return value.place.points.map((at, i) => mark(`vertex ${id} ${i}`, 'handle', at, COLOURS.point));
 }
 
 function handleOf(id: string, line: TracedLine, at: SheetPoint, index: number, chosen: boolean): SceneMark {

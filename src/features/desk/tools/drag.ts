@@ -1,4 +1,5 @@
 import { deskToolText as text } from '#client/text/desk-tools.ts';
+import { profileText } from '#client/text/profiles.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { nearestVertex, segmentAt } from '#shared/compute/geometry/hit-test.ts';
 import type { DocumentEntity } from '#shared/contract/document.ts';
@@ -43,6 +44,7 @@ function isMovable(context: ToolContext, id: string): boolean {
 export function grabVertex(context: ToolContext, at: SheetPx, keys: Modifiers): ToolStep | null {
   const { kind, ids } = context.selection;
   const lineId = ids[0];
+  if (kind === 'profile') return grabProfileVertex(context, at);
   if (context.readOnly || kind !== 'line' || ids.length !== 1 || lineId === undefined) return null;
   const line = context.document.entities[lineId]?.value;
   if (line?.kind !== 'line' || context.hiddenKinds.includes(line.line)) return null;
@@ -61,6 +63,19 @@ export function grabVertex(context: ToolContext, at: SheetPx, keys: Modifiers): 
     state: dragOf(target, at, foot, inserted),
     commands: [{ do: 'preview', values: { [lineId]: inserted } }],
   };
+}
+
+/** Takes hold of a vertex of the selected profile; one of typed places stays where its figures say. */
+function grabProfileVertex({ selection, ...context }: ToolContext, at: SheetPx): ToolStep | null {
+  const id = selection.ids[0];
+  const value = id === undefined ? undefined : context.document.entities[id]?.value;
+  if (context.readOnly || id === undefined || context.hiddenKinds.includes('profile')) return null;
+  if (value?.kind !== 'profile' || value.place.on !== 'sheet') return null;
+  const { points } = value.place;
+  const hit = nearestVertex([{ id, points }], at, reachOf({ selection, ...context }));
+  if (hit === null) return null;
+  const target = { kind: 'vertex', lineId: id, index: hit.index } as const;
+  return { state: dragOf(target, at, sheetPx(hit.at[0], hit.at[1]), null), commands: [] };
 }
 
 function dragOf(
@@ -94,7 +109,7 @@ export function letGo(state: Dragging, at: SheetPx, keys: Modifiers, context: To
     ops: [{ op: 'put' as const, entityId, value }],
   } as const;
   const select =
-    state.target.kind === 'vertex'
+    state.target.kind === 'vertex' && value.kind === 'line'
       ? [{ do: 'select', selection: selectOne('line', entityId, state.target.index) } as const]
       : [];
   return { state: AT_REST, commands: [{ ...run, ops: [...run.ops] }, clear, ...select] };
@@ -103,6 +118,7 @@ export function letGo(state: Dragging, at: SheetPx, keys: Modifiers, context: To
 function labelOf(state: Dragging, value: DocumentEntity): string {
   if (state.withInserted !== null) return text.insertedVertex;
   if (value.kind === 'line') return text.movedVertex(value);
+  if (value.kind === 'profile') return profileText.labels.moved(value.name);
   return value.kind === 'knownPoint' || value.kind === 'readingPoint' ? text.movedMark(value.name) : '';
 }
 
@@ -118,6 +134,11 @@ function valueAt(state: Dragging, at: SheetPx, keys: Modifiers, context: ToolCon
   if (held.kind === 'line' && state.target.kind === 'vertex') {
     const line = state.withInserted?.kind === 'line' ? state.withInserted : held;
     return withPointMoved(line, state.target.index, place);
+  }
+  if (held.kind === 'profile' && held.place.on === 'sheet' && state.target.kind === 'vertex') {
+    const { index } = state.target;
+    const points = held.place.points.map((point, i) => (i === index ? keptPoint(place) : point));
+    return { ...held, place: { on: 'sheet', points } };
   }
   if (held.kind === 'knownPoint') return { ...held, at: keptPoint(place) };
   if (held.kind === 'readingPoint') return { ...held, place: { on: 'sheet', at: keptPoint(place) } };

@@ -110,6 +110,42 @@ describe('the tool that draws a profile', () => {
   });
 });
 
+describe('a vertex of a chosen profile', () => {
+  const keys = { shift: false, alt: false, ctrl: true };
+  const drag = (readOnly: boolean) => {
+    const { store, click, key, places } = desk();
+    click(100, 450);
+    click(300, 450);
+    key('finish');
+    store.setTool('select');
+    store.setReadOnly(readOnly);
+    const host = createToolHost(store);
+    const view = { zoom: 1, reachPx: 8, balloons: [] };
+    host.handle({ type: 'press', at: sheetPx(302, 449), keys }, view);
+    host.handle({ type: 'move', at: sheetPx(352, 499), keys }, view);
+    const previewed = Object.keys(store.getState().preview).length;
+    host.handle({ type: 'release', at: sheetPx(352, 499), keys }, view);
+    return { store, places, previewed };
+  };
+
+  it('is dragged as that of a line, and undo puts it back', () => {
+    const { store, places, previewed } = drag(false);
+    expect(previewed).toBe(1);
+    expect(places()[0]).toEqual([
+      [100, 450],
+      [350, 500],
+    ]);
+    expect(store.getState().selection).toMatchObject({ kind: 'profile', ids: [expect.any(String)] });
+    expect(store.getState().history.undoLabel).toBe('moved a point of Profile 1');
+    store.undo();
+    expect(places()[0]?.[1]).toEqual([300, 450]);
+  });
+
+  it('stays where it is on a net that may not be changed', () => {
+    expect(drag(true).places()[0]?.[1]).toEqual([300, 450]);
+  });
+});
+
 describe('the spacing a profile begins with', () => {
   const map = readSetOut(documentWith({})).map;
 
