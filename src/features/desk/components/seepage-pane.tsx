@@ -80,7 +80,11 @@ function Terms({ document, reading, onOpen }: TermsProps) {
       <CountingPermeability document={document} reading={reading} ratio={ratio} />
       {measured === null ? null : (
         <Aside>
-          {text.measured} <Runs runs={flow(measured)} /> {unit} {terms.perRun[unitSystem]}.
+          {text.measured}{' '}
+          <span className="whitespace-nowrap">
+            <Runs runs={flow(measured)} /> {unit}
+          </span>{' '}
+          {terms.perRun[unitSystem]}.
         </Aside>
       )}
     </MarginSection>

@@ -247,4 +247,20 @@ describe('guides over the sheet', () => {
     diffScene(before, buildScene({ ...input, guides: moved }), sink);
     expect(told).toEqual(['change explanation area strip']);
   });
+
+  it('say their words beside a doubtful place, not over its mark', () => {
+    const at: [number, number] = [300, 300];
+    const finding = { code: 'anglesNotSquare', weight: 'question', text: '', cell: null, entityIds: [], at };
+    const reading = { findings: [finding], lines: [] } as unknown as SceneInput['reading'];
+    const marks = [{ id: 'angle', tone: 'poorAngle' as const, at, text: '71°' }];
+    const items = buildScene(inputOf({ reading, guides: { netCheck: { areas: [], lines: [], marks } } }));
+    const callout = items.find(({ id }) => id === 'netCheck mark angle');
+    if (callout === undefined || !('offsetPx' in callout)) throw new Error('The angle has no words.');
+    const [dx, dy] = callout.offsetPx;
+    // The mark's ring and question mark take 20 px across and reach 24 px up and 10 px down.
+    const clearAcross = Math.abs(dx) - labelWidthPx('71°') / 2 >= 10;
+    const clearUpOrDown = dy - LABEL_HEIGHT_PX / 2 >= 10 || dy + LABEL_HEIGHT_PX / 2 <= -24;
+    expect(clearAcross || clearUpOrDown).toBe(true);
+    expect(Math.hypot(dx, dy)).toBeLessThan(60);
+  });
 });
