@@ -44,11 +44,12 @@ export const independentText = {
   seepageUnit: { SI: 'm³/s per metre', US: 'ft³/s per foot' },
   noPermeability: 'No permeability is entered: heads are right, seepage has no figure.',
   exits: 'Steepest exit gradients',
-  exitsLead: 'At a place, positive outwards of the ground.',
+  exitsLead:
+    'At a place, positive outwards of the ground; a tenth of the boundary is left out at its ends and corners, where the mesh would decide.',
   exitPlace: 'Show',
   exitPlaceOf: (boundary: string) => `Show the steepest exit at ${boundary}`,
   exit: { boundary: 'Boundary', gradient: 'Gradient', place: 'Place' },
-  singular: 'a tenth of its length away from the corner, where it has no bound',
+  singular: 'no bound at its corner',
   net: 'Computed net',
   netCounts: (drops: number, channels: string | null) =>
     channels === null

@@ -13,15 +13,15 @@ import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
 /**
- * The steepest place at which water comes out at one boundary, gradient positive outwards. Where the boundary has a floor
- * edge or a re-entrant corner, at which the gradient has no bound, places nearer to it than a tenth of the boundary are
- * left out: their gradient would tell the size of the mesh.
+ * The steepest place at which water comes out at one boundary, gradient positive outwards. Places nearer than a tenth of
+ * the boundary to its ends and to corners at which the gradient has no bound are left out: there the size of the mesh
+ * would decide it, at a floor edge by a power and where a face of free outflow meets an impervious base by a logarithm.
  */
 export type SteepestExit = {
   readonly id: string;
   readonly at: SheetPoint;
   readonly gradient: number;
-  /** True when places beside such a corner were left out. */
+  /** True when the boundary has a corner at which the gradient has no bound. */
   readonly hasSingular: boolean;
 };
 
@@ -78,20 +78,23 @@ const USUAL_DROPS = 10;
 
 /** The computed net has as many drops as the traced one, so that the two can be laid over one another. */
 function dropsOf({ quantities }: NetReading): number {
-  return quantities.drops ?? quantities.tracedDrops ?? USUAL_DROPS;
+  const counted = quantities.drops ?? quantities.tracedDrops ?? 0;
+  return counted >= 2 ? counted : USUAL_DROPS;
 }
 
-/** Part of the extent of a boundary that is left out beside a place where the gradient has no bound. */
+/** Part of the extent of a boundary that is left out. */
 const LEFT_OUT = 0.1;
 
 function steepestExits(solution: SectionSolution, toSheet: (place: Pair) => SheetPx): SteepestExit[] {
   return [...new Set(solution.exits.map(({ id }) => id))].flatMap((id) => {
     const own = solution.exits.filter((exit) => exit.id === id);
-    const singular = own.filter((exit) => exit.singular);
-    const least = LEFT_OUT * extentOf(own.map(({ at }) => at));
+    const singular = own.filter((exit) => exit.singular).map(({ at }) => at);
+    const ends = endsOf(own.map(({ at }) => at));
+    const least = LEFT_OUT * distance(...ends);
     let worst: { at: Pair; gradient: number } | null = null;
     for (const { at, gradient } of own) {
-      if (gradient === null || singular.some((corner) => distance(corner.at, at) < least)) continue;
+      if (gradient === null || [...ends, ...singular].some((corner) => distance(corner, at) < least))
+        continue;
       if (worst === null || gradient > worst.gradient) worst = { at, gradient };
     }
     if (worst === null) return [];
@@ -100,9 +103,12 @@ function steepestExits(solution: SectionSolution, toSheet: (place: Pair) => Shee
   });
 }
 
-function extentOf(places: readonly Pair[]): number {
-  const [xs, ys] = [places.map(([x]) => x), places.map(([, y]) => y)];
-  return Math.hypot(Math.max(...xs) - Math.min(...xs), Math.max(...ys) - Math.min(...ys));
+/** The two places of a boundary that lie farthest apart, found by two sweeps; it has one place at least. */
+function endsOf(places: readonly Pair[]): [Pair, Pair] {
+  const farthest = (from: Pair) =>
+    places.reduce((far, place) => (distance(from, place) > distance(from, far) ? place : far));
+  const one = farthest(places[0]!);
+  return [one, farthest(one)];
 }
 
 function distance([x, y]: Pair, [ox, oy]: Pair): number {

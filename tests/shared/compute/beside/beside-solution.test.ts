@@ -8,6 +8,7 @@ import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
+import { sketchedNet } from '#tests/support/exact-nets/sketched-net.ts';
 
 // The basic parabola: an exact solution (Kozeny 1931; Casagrande 1937) whose outline is closed as it is drawn.
 const { net, pxPerUnit } = EXACT_NETS[0]!;
@@ -60,6 +61,49 @@ describe('a traced net beside the independent solution of its section', () => {
     const finer = beside(drawn, { accuracy: 1e-5 }).exits[0]!;
     expect(finer.gradient / exit!.gradient).toBeGreaterThan(0.8);
     expect(finer.gradient / exit!.gradient).toBeLessThan(1.25);
+  });
+
+  it('gives the same exit gradient on a finer mesh where a face of free outflow meets the base', () => {
+    const dam = sketchedNet(
+      [
+        {
+          line: 'submergedFace',
+          water: 'headwater',
+          through: [
+            [0, 0],
+            [0, 10],
+          ],
+        },
+        {
+          line: 'ground',
+          through: [
+            [0, 9.98],
+            [0, 11],
+            [10, 11],
+          ],
+        },
+        {
+          line: 'outflowFace',
+          through: [
+            [10.02, 11],
+            [10, 0],
+          ],
+        },
+        {
+          line: 'impervious',
+          through: [
+            [-0.03, 0],
+            [10.03, 0],
+          ],
+        },
+      ],
+      { headwater: 10, tailwater: null, drops: null },
+    );
+    const [coarse, fine] = [300, 900].map((elements) => beside(dam, { elements, accuracy: 1 }));
+    expect(Math.abs(coarse!.exits[0]!.gradient / fine!.exits[0]!.gradient - 1)).toBeLessThan(0.1);
+    // Nothing is traced to count by, so the usual ten drops are drawn; the free surface is found and placed.
+    expect(fine!.net.equipotentials).toHaveLength(9);
+    expect(fine!.net.surface[0]!.length).toBeGreaterThan(10);
   });
 
   it('shows where one line is drawn out of place, with the sign of traced minus independent', () => {
