@@ -6,6 +6,7 @@ export const exitsText = {
   workingOut: 'working out…',
   show: 'Show',
   showExit: (number: number) => `Show: exit ${number}`,
+  remarkOn: (exits: string, remark: string) => `Exit ${exits}: ${remark}`,
   exits: {
     title: 'Exit gradients',
     lead: 'Positive upwards. Average: head lost in the last cell over its length. At the place: by the field.',
@@ -22,7 +23,6 @@ export const exitsText = {
     factor: 'Factor, average',
     pointFactor: 'Factor, place',
     force: (unit: string) => `Seepage force, ${unit}`,
-    remark: 'Remark',
   },
   heave: {
     title: 'Heave of the prism beside a wall',
@@ -52,6 +52,7 @@ export const exitsText = {
     drops: 'Drops to it',
     channels: 'Channels',
     whole: 'Whole flow',
+    tracedOnly: 'Traced channels only: an outermost flow line is no boundary, and water flows beyond it.',
   },
   published: {
     title: 'What books and manuals give',

@@ -31,7 +31,6 @@ export function ExitTable({
     { head: text.factor },
     { head: text.pointFactor },
     { head: text.force(unitWeight) },
-    { head: text.remark, words: true },
   ];
   const rows = exits.map((exit, i) => ({
     key: `${exit.outlet} ${exit.before} ${exit.left}`,
@@ -55,8 +54,27 @@ export function ExitTable({
       fixedText(exit.factor, 1),
       fixedText(exit.pointFactor, 1),
       fixedText(exit.seepageForce, 1),
-      exit.factorNote,
     ],
   }));
-  return <PlainTable caption={text.title} columns={columns} rows={rows} />;
+  return (
+    <>
+      <PlainTable caption={text.title} columns={columns} rows={rows} />
+      <ul className="m-0 list-none p-0 text-sm text-ink-2">
+        {remarksOn(exits).map((remark) => (
+          <li key={remark}>{remark}</li>
+        ))}
+      </ul>
+    </>
+  );
+}
+
+/** Why there is no factor, once for all the exits for which the reason is the same. */
+function remarksOn(exits: readonly ExitReading[]): string[] {
+  const numbers = new Map<string, number[]>();
+  exits.forEach(({ factorNote }, i) => {
+    if (factorNote !== '') numbers.set(factorNote, [...(numbers.get(factorNote) ?? []), i + 1]);
+  });
+  return [...numbers].map(([remark, which]) =>
+    which.length === exits.length ? remark : exitsText.remarkOn(which.join(', '), remark),
+  );
 }

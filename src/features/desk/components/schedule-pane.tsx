@@ -53,7 +53,7 @@ export function SchedulePane({ store, onDownload, onAdd, className = '', views }
     >
       <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
         {views ?? <h2 className="m-0 text-base font-bold">{text.title}</h2>}
-        <span className="text-ink-2">{leadOf(document, reading, stale)}</span>
+        <span className="min-w-40 flex-1 text-sm text-ink-2">{leadOf(document, reading, stale)}</span>
         <span className="ml-auto flex flex-wrap gap-2">
           {onAdd ? <SmallButton onClick={onAdd}>{text.add}</SmallButton> : null}
           <SmallButton onClick={() => void copy()}>{text.copy}</SmallButton>

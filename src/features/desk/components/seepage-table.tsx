@@ -16,7 +16,7 @@ const text = exitsText.seepage;
 export function SeepageTable({ document, reading }: { document: FlowNetDocument; reading: NetReading }) {
   const { unitSystem } = document;
   const unit = useStore(flowUnitChoice, (state) => state.unit) ?? ownFlowUnit(unitSystem);
-  const { outlets, seepage, seepageFigures, drops, channels } = reading.quantities;
+  const { outlets, seepage, seepageFigures, drops, channels, channelsComplete } = reading.quantities;
   const flow = (value: number | null) =>
     value === null ? NO_FIGURE : <Runs runs={powerRuns(flowIn(unit, value, unitSystem), seepageFigures)} />;
   const rows = outlets.map((outlet) => ({
@@ -40,6 +40,9 @@ export function SeepageTable({ document, reading }: { document: FlowNetDocument;
           ]}
           rows={outlets.length > 1 ? [...rows, whole] : [whole]}
         />
+        {seepage === null || channelsComplete ? null : (
+          <p className="m-0 text-sm text-attention">{text.tracedOnly}</p>
+        )}
       </div>
       <FlowUnitField unitSystem={unitSystem} />
     </div>

@@ -187,7 +187,12 @@ describe('exits and quantities', () => {
 
   it('gives no factor without the weight of the soil, and says what to enter', () => {
     const words = exitsPane(apron);
-    expect(words).toContain('Enter the saturated unit weight of the soil');
+    expect(words.match(/Enter the saturated unit weight of the soil/g)).toHaveLength(1);
+  });
+
+  it('does not pass the flow of the traced channels off as the whole', () => {
+    // The ground goes on below the outermost flow line traced.
+    expect(exitsPane(weighed)).toContain('Traced channels only');
   });
 
   it('lists what books give with its source, and what was not looked up as such', () => {
