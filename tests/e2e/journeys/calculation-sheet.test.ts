@@ -48,6 +48,8 @@ describe('the calculation sheet', () => {
     await dialog.getByRole('button', { name: 'Send', exact: true }).click();
     await dialog.waitFor({ state: 'detached' });
     await page.getByRole('link', { name: 'Revision A' }).click();
+    // The desk, which has a panel of the same name, stays until the check page is there.
+    await page.getByText('Revision A, shown here').waitFor();
     const answer = await page.request.get((await (await sheetLink()).getAttribute('href')) ?? '');
     expect(answer.headers()['content-disposition']).toContain('Calculation sheet revision A A4.pdf');
     expect((await answer.body()).subarray(0, 5).toString()).toBe('%PDF-');
