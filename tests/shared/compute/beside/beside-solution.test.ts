@@ -101,6 +101,8 @@ describe('a traced net beside the independent solution of its section', () => {
     );
     const [coarse, fine] = [300, 900].map((elements) => beside(dam, { elements, accuracy: 1 }));
     expect(Math.abs(coarse!.exits[0]!.gradient / fine!.exits[0]!.gradient - 1)).toBeLessThan(0.1);
+    // The toe lies at (1500, 2000) on this sheet, and water comes out over some 3.7 m of the face, at 100 px to a metre.
+    expect(distance(fine!.exits[0]!.at, [1500, 2000])).toBeGreaterThan(30);
     // Nothing is traced to count by, so the usual ten drops are drawn; the free surface is found and placed.
     expect(fine!.net.equipotentials).toHaveLength(9);
     expect(fine!.net.surface[0]!.length).toBeGreaterThan(10);
