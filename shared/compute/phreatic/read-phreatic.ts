@@ -71,7 +71,10 @@ export function readPhreatic(
 }
 
 /** The check with its places carried from the working frame to the sheet. */
-export function phreaticOnSheet(reading: PhreaticReading | null, frame: WorkingFrame): PhreaticReading | null {
+export function phreaticOnSheet(
+  reading: PhreaticReading | null,
+  frame: WorkingFrame,
+): PhreaticReading | null {
   if (reading === null || frame.isSheet) return reading;
   const onSheet = <T extends { at: [number, number] }>(placed: T): T => {
     const [x, y] = frame.toSheet(placed.at);
