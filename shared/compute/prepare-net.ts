@@ -166,7 +166,10 @@ export function prepareNet(
     cells,
     netCheck,
     soils,
-    ground: groundOf(model, heads, frame, soils, doubt, inputs, levelUnit, memory),
+    ground: {
+      ...groundOf(model, heads, frame, soils, doubt, inputs, levelUnit, memory),
+      lacksLine: intervals.wide.length > 0,
+    },
     doubt: finished ? quantityDoubtOf(doubt, quantities, netCheck.cells, counted) : NO_QUANTITY_DOUBT,
     quantities,
     findings,
@@ -206,7 +209,7 @@ function groundOf(
   inputs: SingleInputs,
   levelUnit: string,
   memory: FieldMemory | null,
-): ReadingGround {
+): Omit<ReadingGround, 'lacksLine'> {
   const shapes = (...kinds: Parameters<typeof linesOfKind>[1][]) =>
     linesOfKind(model.lines, ...kinds).map((line) => line.shape);
   const fieldGround = {

@@ -41,4 +41,6 @@ export type ReadingGround = {
   /** Working pixels to pixels of the sheet. */
   readonly toSheet: (place: SheetPx) => Pair;
   readonly unequal: boolean;
+  /** An equipotential seems to be missing, so that the count is wrong for all the net. */
+  readonly lacksLine: boolean;
 };

@@ -32,6 +32,10 @@ const ON_THIN_WALL: Said = {
   code: 'onThinWall',
   text: 'The place lies on a thin wall, nearer than the tracing can tell its two sides apart.',
 };
+const LINE_MISSING: Said = {
+  code: 'lineMissing',
+  text: 'An equipotential seems to be missing from the net; then the count and this figure with it are wrong.',
+};
 const BY_HAND: Said = {
   code: 'byHandOnly',
   text: 'The field could not be solved here: the figure is by hand’s rule.',
@@ -85,6 +89,7 @@ function doubtAt(
   byHand: boolean,
 ): Said | null {
   if (straddlesWall(ground.strips, lie.strip, at, ground.walls, ground.slack)) return ON_THIN_WALL;
+  if (ground.lacksLine) return LINE_MISSING;
   return byHand ? BY_HAND : null;
 }
 

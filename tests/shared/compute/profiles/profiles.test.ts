@@ -9,7 +9,7 @@ import { sectionMapOf } from '#shared/compute/section-map.ts';
 import type { EntityOf, FlowNetDocument } from '#shared/contract/document.ts';
 import { netReading } from '#shared/contract/reading.ts';
 import { profileCsv } from '#shared/text/profile-csv.ts';
-import { changed, withAdded } from '#tests/support/exact-nets/edit-net.ts';
+import { changed, withAdded, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 
 const apron = flatApronNet({
@@ -89,6 +89,20 @@ describe('a base', () => {
     expect(samples.at(-1)!.status).toBe('withheld');
     expect(uplift).toMatchObject({ total: null, excess: null });
     expect(uplift!.note).toContain('nothing could be read');
+  });
+
+  it('says at every place that a line seems to be missing from the net', () => {
+    const whole = exactNetDocument(apron, { pxPerUnit: 55 });
+    expect(readProfile(whole, profileOf({})).samples.some(({ doubtful }) => doubtful !== null)).toBe(false);
+    const without = changed(
+      withLines(whole, 'equipotential', (line, i) => (i === 3 ? null : line)),
+      'netCount',
+      (value) => ({ ...value, drops: apron.drops - 1 }),
+    );
+    const { samples } = readProfile(without, profileOf({}));
+    const read = samples.filter(({ status }) => status === 'read');
+    expect(read.length).toBeGreaterThan(10);
+    expect(read.every(({ doubtful }) => doubtful?.code === 'lineMissing')).toBe(true);
   });
 
   it('is not read while the net is unfinished', () => {
