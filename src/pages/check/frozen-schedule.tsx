@@ -25,7 +25,8 @@ export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; s
       <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
         <h2 className="m-0 text-base font-bold">{text.title}</h2>
         <span className="text-ink-2">
-          {scheduleLead(document, reading)}, {payload.engineVersion === '1' ? text.provisional : text.plusMinus}
+          {scheduleLead(document, reading)},{' '}
+          {payload.engineVersion === '1' ? text.provisional : text.plusMinus}
         </span>
         <button
           type="button"
