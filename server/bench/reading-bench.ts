@@ -2,7 +2,7 @@ import { basicParabolaNet } from '#shared/compute/exact/basic-parabola-net.ts';
 import type { ExactNet } from '#shared/compute/exact/exact-net.ts';
 import { flatApronNet } from '#shared/compute/exact/flat-apron-net.ts';
 import { sheetPileNet } from '#shared/compute/exact/sheet-pile-net.ts';
-import { createNetReader } from '#shared/compute/net-reader.ts';
+import { createNetReader, type NetReader } from '#shared/compute/net-reader.ts';
 import { prepareNet } from '#shared/compute/prepare-net.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
@@ -54,6 +54,11 @@ function dragged(document: FlowNetDocument, turn: number): FlowNetDocument {
   return copy;
 }
 
+function readAgain(reader: NetReader, document: FlowNetDocument): void {
+  // Points that are not read ahead would be measured as fast ones.
+  if (reader.readPoints(document) === null) throw new Error('The points of the bench are not read ahead.');
+}
+
 async function timed(work: () => unknown): Promise<number> {
   const start = performance.now();
   work();
@@ -63,14 +68,18 @@ async function timed(work: () => unknown): Promise<number> {
 export const reread200: Bench = {
   name: 'reread-200',
   about:
-    '200 points of a net of 60 lines read again after a vertex was dragged, beside reading it from scratch',
+    '200 points of a net of 60 lines read again after a vertex was dragged, beside reading the net from scratch',
   async run(): Promise<BenchRow[]> {
     const document = sixtyLines();
     const reader = createNetReader();
     reader.read(document);
     const changes = Array.from({ length: RUNS + 1 }, (_, turn) => dragged(document, turn));
     let turn = 0;
-    const again = await repeated(RUNS, () => timed(() => reader.read(changes[turn++]!)));
+    const again = await repeated(RUNS, () => {
+      // As on the desk, where the whole net is read between one drag and the next.
+      reader.read(document);
+      return timed(() => readAgain(reader, changes[turn++]!));
+    });
     const scratch = await repeated(RUNS, () => timed(() => readNet(structuredClone(document))));
     return [rowOf('reread-200', 'ms', again, scratch)];
   },

@@ -1,6 +1,6 @@
 import { FieldMemory } from '#shared/compute/field/field-memory.ts';
 import { type KeptNet, readAndKeep } from '#shared/compute/read-net.ts';
-import { type PointsRead, rereadPoints } from '#shared/compute/reread-points.ts';
+import { type PointsRead, rereadPoints, type SmallChange } from '#shared/compute/reread-points.ts';
 import type { FlowNetDocument, VersionedEntity } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
@@ -37,25 +37,22 @@ export function createNetReader(): NetReader {
       if (last === null || kept === null) return null;
       const now = likeBefore(document, last);
       const change = smallChange(last, now);
-      return change && rereadPoints(now, change.moved, kept, memory);
+      return change && rereadPoints(now, change, kept, memory);
     },
   };
 }
 
 /** What of a net has changed when it is no more than reading points and the vertices of at most one equipotential. */
-function smallChange(before: FlowNetDocument, now: FlowNetDocument): { moved: string | null } | null {
+function smallChange(before: FlowNetDocument, now: FlowNetDocument): SmallChange | null {
   if (!equalValues({ ...before, entities: null }, { ...now, entities: null })) return null;
   const ids = new Set([...Object.keys(before.entities), ...Object.keys(now.entities)]);
-  let moved: string | null = null;
-  for (const id of ids) {
-    const [from, to] = [before.entities[id]?.value, now.entities[id]?.value];
-    if (from === to || [from, to].every((value) => value === undefined || value.kind === 'readingPoint')) {
-      continue;
-    }
-    if (moved !== null || !isMovedEquipotential(from, to)) return null;
-    moved = id;
-  }
-  return { moved };
+  const changed = [...ids].filter((id) => before.entities[id]?.value !== now.entities[id]?.value);
+  const valuesOf = (id: string) => [before.entities[id]?.value, now.entities[id]?.value] as const;
+  const others = changed.filter((id) =>
+    valuesOf(id).some((value) => value !== undefined && value.kind !== 'readingPoint'),
+  );
+  if (others.length > 1 || !others.every((id) => isMovedEquipotential(...valuesOf(id)))) return null;
+  return { changed, moved: others[0] ?? null };
 }
 
 function isMovedEquipotential(from: VersionedEntity['value'] | undefined, to: typeof from): boolean {
@@ -80,14 +77,20 @@ function sameAsBefore(entity: VersionedEntity, before: VersionedEntity | undefin
 function equalValues(a: unknown, b: unknown): boolean {
   if (Object.is(a, b)) return true;
   if (typeof a !== 'object' || typeof b !== 'object' || a === null || b === null) return false;
-  if (Array.isArray(a) || Array.isArray(b)) {
-    if (!Array.isArray(a) || !Array.isArray(b) || a.length !== b.length) return false;
-    return a.every((item, i) => equalValues(item, b[i]));
-  }
+  if (Array.isArray(a) || Array.isArray(b)) return Array.isArray(a) && Array.isArray(b) && equalLists(a, b);
   const [left, right] = [a as Record<string, unknown>, b as Record<string, unknown>];
   const keys = Object.keys(left);
   return (
     keys.length === Object.keys(right).length &&
     keys.every((key) => Object.hasOwn(right, key) && equalValues(left[key], right[key]))
   );
+}
+
+/** A loop, since this is asked of every vertex of a net. */
+function equalLists(a: readonly unknown[], b: readonly unknown[]): boolean {
+  if (a.length !== b.length) return false;
+  for (let i = 0; i < a.length; i += 1) {
+    if (!equalValues(a[i], b[i])) return false;
+  }
+  return true;
 }

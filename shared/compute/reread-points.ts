@@ -16,22 +16,24 @@ import type { NetReading } from '#shared/contract/reading.ts';
 /** The reading points of a net and how they compare with what was measured, ahead of the whole reading. */
 export type PointsRead = Pick<NetReading, 'points' | 'measured'>;
 
+/** Ids of the entities that are not as before, and which of them is an equipotential whose vertices moved. */
+export type SmallChange = { readonly changed: readonly string[]; readonly moved: string | null };
+
 /**
  * Reads the points of a net again after a small change, from what the whole reading of before has left: where reading
- * points were changed, those; where one equipotential was moved, the points in the strips beside it. `moved`: id of
- * that line, null when no line was. The order and the count of before are taken to hold, so that the whole net is to be
+ * points were changed, those; where one equipotential was moved, the points in the strips beside it. The order and the count of before are taken to hold, so that the whole net is to be
  * read after all; where that finds them changed, or withholds, it stands. Null when more than that may have changed.
  */
 export function rereadPoints(
   document: FlowNetDocument,
-  moved: string | null,
+  { changed, moved }: SmallChange,
   kept: KeptNet,
   memory: FieldMemory,
 ): PointsRead | null {
   if (kept === null) return null;
-  const { frame, ground } = kept.prepared;
+  const { ground } = kept.prepared;
   const accuracyPx = singleInputs(document).count.tracingAccuracyPx;
-  const working = steadyTraces(tracesInWorkingFrame(document, frame), accuracyPx);
+  const working = workingWith(document, changed, kept.prepared, accuracyPx);
   const net = moved === null ? unmoved(kept.prepared) : movedNet(kept.prepared, working, moved, accuracyPx);
   if (net === null) return null;
   const prepared = onNet({ ...kept.prepared, working }, net, memory);
@@ -44,6 +46,20 @@ export function rereadPoints(
   });
   const points = pointsOnSheet(document, prepared, byNet);
   return { points, measured: compareMeasured(document, points) };
+}
+
+/** The traces in working pixels, only what changed carried there anew. */
+function workingWith(
+  document: FlowNetDocument,
+  changed: readonly string[],
+  { working, frame }: PreparedNet,
+  accuracyPx: number,
+): FlowNetDocument {
+  const anew = Object.fromEntries(Object.entries(document.entities).filter(([id]) => changed.includes(id)));
+  const moved = steadyTraces(tracesInWorkingFrame({ ...document, entities: anew }, frame), accuracyPx);
+  const entities = { ...working.entities };
+  for (const id of changed) delete entities[id];
+  return { ...document, entities: { ...entities, ...moved.entities } };
 }
 
 function unmoved({ model }: PreparedNet): MovedNet {

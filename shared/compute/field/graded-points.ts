@@ -53,7 +53,7 @@ class QuadTree {
       if (this.child[square] !== 0) continue;
       const [x, y, half] = [this.x[square]!, this.y[square]!, this.half[square]!];
       for (const [dx, dy] of BESIDE) {
-        const other = this.leafAt(x + 1.5 * half * dx, y + 1.5 * half * dy);
+        const other = this.leafAt(x + 1.5 * half * dx, y + 1.5 * half * dy, 2.5 * half);
         if (this.half[other]! <= 2.5 * half) continue;
         this.split(other);
         const first = this.child[other]!;
@@ -82,9 +82,10 @@ class QuadTree {
     return leaves;
   }
 
-  private leafAt(x: number, y: number): number {
+  /** The leaf at a place, or the first square above it that is no larger than `enough`. */
+  private leafAt(x: number, y: number, enough = 0): number {
     let square = 0;
-    while (this.child[square] !== 0) {
+    while (this.child[square] !== 0 && this.half[square]! > enough) {
       square = this.child[square]! + (x > this.x[square]! ? 1 : 0) + (y > this.y[square]! ? 2 : 0);
     }
     return square;

@@ -3,16 +3,10 @@ import { distanceToRing, type Ring, ringContains } from '#shared/compute/geometr
 import { firstOf, lastOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { carrierGraph } from '#shared/compute/net/carrier-graph.ts';
-import { carryToFeet, type Foot, type FootedLine } from '#shared/compute/net/feet.ts';
+import { type Carrier, carryToFeet, type Foot, type FootedLine } from '#shared/compute/net/feet.ts';
 import { checkLines } from '#shared/compute/net/net-checks.ts';
-import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
-import {
-  carriersOf,
-  type Equipotential,
-  type NetModel,
-  reachOf,
-  stripsOf,
-} from '#shared/compute/net/net-model.ts';
+import type { NetLine } from '#shared/compute/net/net-lines.ts';
+import { type Equipotential, type NetModel, reachOf, stripsOf } from '#shared/compute/net/net-model.ts';
 import type { OrderedPair } from '#shared/compute/net/order.ts';
 import { holdsPartOf, type Strip } from '#shared/compute/net/strips.ts';
 import { findTangles } from '#shared/compute/net/tangles.ts';
@@ -36,21 +30,22 @@ export function withLineMoved(
   const line = lines.find((each) => each.id === id);
   if (old === undefined || line === undefined || old.members.length > 1) return null;
   const reach = reachOf(lines, accuracyPx);
-  const carriers = carriersOf(before.walls, linesOfKind(lines, 'flowLine'), before.potentials);
+  const { carriers, potentials } = before;
   const footed = carryToFeet(line.shape, carriers, reach);
   const moved = { ...old, line, footed };
   if (!endsAlike(footed, old.footed) || !standsClear(moved, before, accuracyPx, reach)) return null;
   const equipotentials = before.equipotentials.map((each) => (each === old ? moved : each));
   const pairs = before.order.pairs.filter((pair) => isTouched(pair, id, before.strips));
-  const fresh = stripsOf({ pairs }, equipotentials, before.potentials, (more) =>
-    carrierGraph([...carriers, ...more], before.potentials, reach),
-  );
+  const graphWith = (more: readonly Carrier[]) => carrierGraph([...carriers, ...more], potentials, reach);
+  const ways = reach === before.reach ? before.ways : graphWith([]);
+  const fresh = stripsOf({ pairs }, equipotentials, potentials, ways, graphWith);
   const touched = pairs.flatMap((pair) => before.strips.filter((strip) => bounds(strip, pair)));
   if (!closeAlike(touched, fresh)) return null;
   const strips = before.strips.map((strip) => fresh[touched.indexOf(strip)] ?? strip);
   const others = before.strips.filter((strip) => !touched.includes(strip));
   if (others.some(({ ring }) => holdsPartOf(ring, footed.shape))) return null;
-  return { model: { ...before, lines, equipotentials, strips, reach }, touched: [...touched, ...fresh] };
+  const model = { ...before, lines, equipotentials, strips, reach, ways };
+  return { model, touched: [...touched, ...fresh] };
 }
 
 /** True for a place in one of the strips, or within `slack` of it: its reading may hang on them. Working pixels. */

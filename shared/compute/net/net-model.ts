@@ -34,6 +34,9 @@ export type NetModel = {
   readonly potentials: readonly Potential[];
   readonly order: FlowOrder;
   readonly strips: readonly Strip[];
+  /** Lines on which equipotentials end, and how they hang together. */
+  readonly carriers: readonly Carrier[];
+  readonly ways: CarrierGraph;
   /** Lines that no flow crosses: impervious boundaries and the phreatic line. */
   readonly walls: readonly NetLine[];
   /** Greatest gap taken for a tracing error. */
@@ -74,7 +77,8 @@ export function modelNet(
   const links = neighbourLinks(heads, shapesOf(walls), shapesOf(flowLines));
   const levels = new Map(potentials.map(({ id, outHead }) => [id, outHead]));
   const seen = orderAlongFlow(heads, links, levels);
-  const strips = stripsOf(seen, equipotentials, potentials, (more) =>
+  const ways = carrierGraph(carriers, potentials, reach);
+  const strips = stripsOf(seen, equipotentials, potentials, ways, (more) =>
     carrierGraph([...carriers, ...more], potentials, reach),
   );
   const held = new Set(carriers.filter((carrier) => carrier.held === 'atOneHead').map(({ id }) => id));
@@ -85,6 +89,8 @@ export function modelNet(
     potentials,
     order,
     strips,
+    carriers,
+    ways,
     walls,
     reach,
     findings: [
@@ -119,7 +125,7 @@ function shapesOf(lines: readonly NetLine[]): Polyline[] {
  * Faces along which the head is the elevation carry feet too: equipotentials end on them. So do boundaries of a head
  * between the highest and the lowest, which the flow passes beside.
  */
-export function carriersOf(
+function carriersOf(
   walls: readonly NetLine[],
   flowLines: readonly NetLine[],
   potentials: readonly Potential[],
@@ -149,11 +155,15 @@ function headLines(equipotentials: readonly Equipotential[], potentials: readonl
   ];
 }
 
-/** The strips of the pairs that have one, in the order of the pairs; `graphWith` adds carriers to those of the net. */
+/**
+ * The strips of the pairs that have one, in the order of the pairs. `plain`: the carriers of the net, to which `graphWith`
+ * adds more.
+ */
 export function stripsOf(
   order: Pick<FlowOrder, 'pairs'>,
   equipotentials: readonly Equipotential[],
   potentials: readonly Potential[],
+  plain: CarrierGraph,
   graphWith: (more: readonly Carrier[]) => CarrierGraph,
 ): Strip[] {
   const stripLines = new Map<string, StripLine>([
@@ -162,7 +172,6 @@ export function stripsOf(
       ({ id, shape }) => [id, { id, shape, start: null, end: null, isBoundary: true }] as const,
     ),
   ]);
-  const plain = graphWith([]);
   return order.pairs
     .map((pair) => {
       const lines = equipotentials.filter(({ id }) => id !== pair.before && id !== pair.after);
