@@ -48,6 +48,7 @@ describe('a reader that remembers', () => {
         expect(reader.read(document)).toEqual(readNet(structuredClone(document)));
         for (const each of changes) {
           document = changed(document, each);
+          expect(() => reader.readPoints(document)).not.toThrow();
           expect(reader.read(document)).toEqual(readNet(structuredClone(document)));
         }
         // Undone again, what was kept of the last change must not stand.
@@ -92,6 +93,7 @@ describe('a reader that remembers', () => {
     const reader = createNetReader();
     fc.assert(
       fc.property(arbitraryDocument(), (document) => {
+        expect(() => reader.readPoints(document)).not.toThrow();
         expect(reader.read(document)).toEqual(readNet(structuredClone(document)));
       }),
       { numRuns: 60 },
