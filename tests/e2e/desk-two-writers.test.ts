@@ -24,7 +24,7 @@ afterAll(() => world.close());
 /** Others see a change within a few seconds. */
 const WITHIN = { timeout: 8000 };
 
-const headwater = (on: Page) => on.getByRole('region', { name: 'Water levels' }).getByLabel(/^Headwater/);
+const headwater = (on: Page) => on.getByRole('region', { name: 'Water levels' }).getByLabel(/^Headwater,/);
 
 async function typeHeadwater(on: Page, level: string): Promise<void> {
   if (!(await headwater(on).isVisible())) await cell(on, 'Headwater').click();

@@ -78,6 +78,8 @@ describe('signing in', () => {
     const focused = () => page.evaluate(() => document.activeElement?.textContent ?? '');
     await expect.poll(focused).toBe('Harrow Fen Dam');
     await page.keyboard.press('Tab');
+    await expect.poll(focused).toBe('Seepage along the dam');
+    await page.keyboard.press('Tab');
     await expect.poll(focused).toBe('Settings and people');
     await page.getByRole('link', { name: 'Skip to the content' }).press('Enter');
     expect(await page.evaluate(() => document.activeElement?.id)).toBe('content');
