@@ -67,32 +67,46 @@ function strayAt(points: readonly Pair[], along: Float64Array, i: number): numbe
   return Number.isFinite(square) ? Math.hypot(dx, dy) / Math.sqrt(square) : 0;
 }
 
-/** A fitted place and its standard deviation for a tremor of 1. */
-type Fit = { readonly at: Pair; readonly spread: number };
-
 function placeWithoutTremor(points: readonly Pair[], along: Float64Array, i: number, tremor: number): Pair {
-  const fits: Fit[] = [{ at: points[i]!, spread: 1 }];
-  const sums = new ParabolaSums(points, along, i);
+  const fit = new ParabolaFit(points, along, i);
+  // Places and standard deviations, for a tremor of 1, of the fits that agree so far, flat: x y spread.
+  const fits = [points[i]![0], points[i]![1], 1];
   for (const window of WINDOWS) {
-    if (window > i && window > points.length - 1 - i && fits.length > WINDOWS.length / 2) break;
-    const fit = sums.fitOver(window);
-    if (fit === null) continue;
-    const agrees = fits.every(
-      (other) =>
-        Math.hypot(fit.at[0] - other.at[0], fit.at[1] - other.at[1]) <=
-        AGREE * tremor * (fit.spread + other.spread),
-    );
-    if (!agrees) break;
-    fits.push(fit);
+    if (window > i && window > points.length - 1 - i && fits.length > (3 * WINDOWS.length) / 2) break;
+    if (!fit.over(window)) continue;
+    if (!agrees(fit, fits, AGREE * tremor)) break;
+    fits.push(fit.x, fit.y, fit.spread);
   }
-  return fits[fits.length - 1]!.at;
+  return [fits[fits.length - 3]!, fits[fits.length - 2]!];
 }
 
-/** Sums for the least squares of a parabola about a vertex, taken further as the window grows. */
-class ParabolaSums {
-  private readonly s = [0, 0, 0, 0, 0];
-  private readonly x = [0, 0, 0];
-  private readonly y = [0, 0, 0];
+function agrees(fit: ParabolaFit, others: readonly number[], allowed: number): boolean {
+  for (let k = 0; k < others.length; k += 3) {
+    const apart = Math.hypot(fit.x - others[k]!, fit.y - others[k + 1]!);
+    if (!(apart <= allowed * (fit.spread + others[k + 2]!))) return false;
+  }
+  return true;
+}
+
+/**
+ * The least-squares parabola about a vertex, its sums taken further as the window grows. Numbers in fields of their own:
+ * it is worked out for every vertex of a net at each reading.
+ */
+class ParabolaFit {
+  x = 0;
+  y = 0;
+  spread = 1;
+  private s0 = 0;
+  private s1 = 0;
+  private s2 = 0;
+  private s3 = 0;
+  private s4 = 0;
+  private x0 = 0;
+  private x1 = 0;
+  private x2 = 0;
+  private y0 = 0;
+  private y1 = 0;
+  private y2 = 0;
   private reached = 0;
 
   constructor(
@@ -103,38 +117,46 @@ class ParabolaSums {
     this.take(middle);
   }
 
-  /** The parabola's place at the vertex; null where fewer than five vertices are in the window. */
-  fitOver(window: number): Fit | null {
+  /** Fits over so many vertices on either side; false where fewer than five are in the window. */
+  over(window: number): boolean {
     while (this.reached < window) {
       this.reached += 1;
       this.take(this.middle - this.reached);
       this.take(this.middle + this.reached);
     }
-    const [n, s1, s2, s3, s4] = this.s as [number, number, number, number, number];
-    if (n < 5) return null;
+    const { s0, s1, s2, s3, s4 } = this;
+    if (s0 < 5) return false;
     // First row of the inverse of the normal equations: the value at the vertex itself.
-    const [a, b, c] = [s2 * s4 - s3 * s3, s2 * s3 - s1 * s4, s1 * s3 - s2 * s2];
-    const determinant = n * a + s1 * b + s2 * c;
-    if (!(determinant > 0)) return null;
-    const atVertex = ([m0, m1, m2]: readonly number[]) => (a * m0! + b * m1! + c * m2!) / determinant;
-    const [px, py] = this.points[this.middle]!;
-    return { at: [px + atVertex(this.x), py + atVertex(this.y)], spread: Math.sqrt(a / determinant) };
+    const a = s2 * s4 - s3 * s3;
+    const b = s2 * s3 - s1 * s4;
+    const c = s1 * s3 - s2 * s2;
+    const determinant = s0 * a + s1 * b + s2 * c;
+    if (!(determinant > 0)) return false;
+    const at = this.points[this.middle]!;
+    this.x = at[0] + (a * this.x0 + b * this.x1 + c * this.x2) / determinant;
+    this.y = at[1] + (a * this.y0 + b * this.y1 + c * this.y2) / determinant;
+    this.spread = Math.sqrt(a / determinant);
+    return true;
   }
 
   private take(i: number): void {
-    const point = this.points[i];
-    if (point === undefined) return;
+    if (i < 0 || i >= this.points.length) return;
+    const point = this.points[i]!;
+    const at = this.points[this.middle]!;
     const t = this.along[i]! - this.along[this.middle]!;
-    const dx = point[0] - this.points[this.middle]![0];
-    const dy = point[1] - this.points[this.middle]![1];
-    let power = 1;
-    for (let k = 0; k < 5; k += 1) {
-      this.s[k] = this.s[k]! + power;
-      if (k < 3) {
-        this.x[k] = this.x[k]! + power * dx;
-        this.y[k] = this.y[k]! + power * dy;
-      }
-      power *= t;
-    }
+    const dx = point[0] - at[0];
+    const dy = point[1] - at[1];
+    const tt = t * t;
+    this.s0 += 1;
+    this.s1 += t;
+    this.s2 += tt;
+    this.s3 += tt * t;
+    this.s4 += tt * tt;
+    this.x0 += dx;
+    this.x1 += t * dx;
+    this.x2 += tt * dx;
+    this.y0 += dy;
+    this.y1 += t * dy;
+    this.y2 += tt * dy;
   }
 }
