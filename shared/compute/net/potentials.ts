@@ -1,6 +1,6 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
-import { lengthOf, type Polyline, pointAlong, vertexOf } from '#shared/compute/geometry/polyline.ts';
+import { lengthOf, type Polyline, vertexOf } from '#shared/compute/geometry/polyline.ts';
 import { clipAtLevel } from '#shared/compute/net/clip-at-level.ts';
 import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
@@ -83,11 +83,6 @@ function onceEach(findings: readonly Finding[]): Finding[] {
 /** Elevation of a place on the sheet, base-raster pixels to document length unit. */
 export function elevationAt(map: SectionMap, x: number, y: number): number {
   return map.toSection(sheetPx(x, y))[1];
-}
-
-/** Total head of a potential boundary at distance `s` (pixels) along its wetted shape. */
-export function headAlong(potential: Potential, map: SectionMap, s: number): number {
-  return potential.level ?? elevationAt(map, ...pointAlong(potential.shape, s));
 }
 
 function submerged(

@@ -17,16 +17,14 @@ export type PlaceHead =
       /** (∂h/∂offset, ∂h/∂elevation); null where the field could not be solved. */
       readonly gradient: readonly [number, number] | null;
       readonly doubtful: Said | null;
-      readonly doubt: ReadingDoubt;
+      /** Worked out when it is asked for: a mean over many places wants it at few of them. */
+      readonly doubt: () => ReadingDoubt;
     }
   | { readonly status: 'abovePhreatic' }
   | ({ readonly status: 'withheld' } & Said);
 
 /** Whose place it is: places of one tracing share its errors. `typed`: given in section coordinates. */
 export type PlaceOrigin = { readonly id: string; readonly typed: boolean };
-
-/** Reads the head at any place in working pixels. */
-export type HeadAtPlace = (at: SheetPx) => PlaceHead;
 
 const ON_THIN_WALL: Said = {
   code: 'onThinWall',
@@ -60,19 +58,20 @@ export function headAtPlace(at: SheetPx, ground: ReadingGround, origin: PlaceOri
     totalHead: found.totalHead,
     gradient: field !== null && 'gradient' in field ? finitePair(field.gradient) : null,
     doubtful: doubtAt(at, lie, ground, field === null),
-    doubt: doubtAtPlace(
-      {
-        ...origin,
-        at,
-        lie,
-        elevationPlusMinus: null,
-        fraction: fractionOf(found.totalHead, lie),
-        gradient: field !== null && 'gradient' in field ? field.gradient : [0, 0],
-        totalHead: found.totalHead,
-        pressureHead: found.totalHead - ground.map.toSection(at)[1],
-      },
-      ground,
-    ),
+    doubt: () =>
+      doubtAtPlace(
+        {
+          ...origin,
+          at,
+          lie,
+          elevationPlusMinus: null,
+          fraction: fractionOf(found.totalHead, lie),
+          gradient: field !== null && 'gradient' in field ? field.gradient : [0, 0],
+          totalHead: found.totalHead,
+          pressureHead: found.totalHead - ground.map.toSection(at)[1],
+        },
+        ground,
+      ),
   };
 }
 

@@ -1,4 +1,5 @@
 import { halfWidth } from '#shared/compute/doubt/contributions.ts';
+import type { ReadingDoubt } from '#shared/compute/doubt/point-doubt.ts';
 import { type SectionPt, sheetPx } from '#shared/compute/frames.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
 import type { PreparedNet } from '#shared/compute/prepare-net.ts';
@@ -71,10 +72,8 @@ function sampleAt({ at, distance }: ProfilePlace, origin: PlaceOrigin, prepared:
   const [offset, elevation] = at;
   const head = headAtPlace(onNet, ground, origin);
   const place = { distance, offset, elevation, at: [x, y] as [number, number] };
-  return {
-    sample: { ...place, ...figuresAt(at, head, ground, soils) },
-    doubt: head.status === 'read' ? head.doubt : null,
-  };
+  const doubt = head.status === 'read' ? head.doubt() : null;
+  return { sample: { ...place, ...figuresAt(at, head, doubt, ground, soils) }, doubt };
 }
 
 type Figures = Omit<ProfileSample, 'distance' | 'offset' | 'elevation' | 'at'>;
@@ -90,7 +89,13 @@ const NO_FIGURES = {
   ru: null,
 };
 
-function figuresAt(at: SectionPt, head: PlaceHead, ground: ReadingGround, soils: SoilGround): Figures {
+function figuresAt(
+  at: SectionPt,
+  head: PlaceHead,
+  doubt: ReadingDoubt | null,
+  ground: ReadingGround,
+  soils: SoilGround,
+): Figures {
   if (head.status === 'withheld') {
     return { ...NO_FIGURES, status: 'withheld', reason: { code: head.code, text: head.text } };
   }
@@ -111,10 +116,10 @@ function figuresAt(at: SectionPt, head: PlaceHead, ground: ReadingGround, soils:
     reason: null,
     doubtful: head.doubtful,
     totalHead: head.totalHead,
-    totalHeadPlusMinus: finiteOrNull(halfWidth(head.doubt.totalHead)),
+    totalHeadPlusMinus: finiteOrNull(halfWidth(doubt?.totalHead ?? [])),
     pressureHead,
     porePressure,
-    porePressurePlusMinus: finiteOrNull(halfWidth(head.doubt.porePressure)),
+    porePressurePlusMinus: finiteOrNull(halfWidth(doubt?.porePressure ?? [])),
     ru: overburden === null ? null : pressureRatio(porePressure, overburden),
   };
 }

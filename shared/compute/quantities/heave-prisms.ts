@@ -119,7 +119,7 @@ const DOUBT_PIECES = 8;
 /** Half-width (95 %) of the mean head over the base less the outlet's: what all places share is kept together. */
 function meanPlusMinus(headAt: (part: number) => PlaceHead, ground: ReadingGround): number | null {
   const places = Array.from({ length: DOUBT_PIECES }, (_, i) => headAt((i + 0.5) / DOUBT_PIECES));
-  const doubts = places.map((head) => (head.status === 'read' ? head.doubt.totalHead : []));
+  const doubts = places.map((head) => (head.status === 'read' ? head.doubt().totalHead : []));
   const { datumPlusMinus } = ground.doubt.water;
   const datum = [{ cause: 'datum', source: 'datum' as const, amount: datumPlusMinus ?? 0 }];
   const plusMinus = halfWidth(

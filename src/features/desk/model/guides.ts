@@ -53,8 +53,6 @@ export type GuideOwner = (typeof GUIDE_OWNERS)[number];
 
 export type GuidesByOwner = Readonly<Partial<Record<GuideOwner, Guides>>>;
 
-export const NO_GUIDES: Guides = { areas: [], lines: [], marks: [] };
-
 /** The guides of all owners with those of one put in, or taken out with null. */
 export function withGuides(all: GuidesByOwner, owner: GuideOwner, guides: Guides | null): GuidesByOwner {
   if (guides === null && all[owner] === undefined) return all;

@@ -8,7 +8,7 @@ import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
-import { sketchedNet } from '#tests/support/exact-nets/sketched-net.ts';
+import { uprightDam } from '#tests/support/exact-nets/upright-dam.ts';
 
 // The basic parabola: an exact solution (Kozeny 1931; Casagrande 1937) whose outline is closed as it is drawn.
 const { net, pxPerUnit } = EXACT_NETS[0]!;
@@ -64,41 +64,7 @@ describe('a traced net beside the independent solution of its section', () => {
   });
 
   it('gives the same exit gradient on a finer mesh where a face of free outflow meets the base', () => {
-    const dam = sketchedNet(
-      [
-        {
-          line: 'submergedFace',
-          water: 'headwater',
-          through: [
-            [0, 0],
-            [0, 10],
-          ],
-        },
-        {
-          line: 'ground',
-          through: [
-            [0, 9.98],
-            [0, 11],
-            [10, 11],
-          ],
-        },
-        {
-          line: 'outflowFace',
-          through: [
-            [10.02, 11],
-            [10, 0],
-          ],
-        },
-        {
-          line: 'impervious',
-          through: [
-            [-0.03, 0],
-            [10.03, 0],
-          ],
-        },
-      ],
-      { headwater: 10, tailwater: null, drops: null },
-    );
+    const dam = uprightDam();
     const [coarse, fine] = [300, 900].map((elements) => beside(dam, { elements, accuracy: 1 }));
     expect(Math.abs(coarse!.exits[0]!.gradient / fine!.exits[0]!.gradient - 1)).toBeLessThan(0.1);
     // The toe lies at (1500, 2000) on this sheet, and water comes out over some 3.7 m of the face, at 100 px to a metre.

@@ -10,7 +10,7 @@ import type { FlowNetDocument } from '#shared/contract/document.ts';
 import { changed } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument, type Tracing } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
-import { sketchedNet } from '#tests/support/exact-nets/sketched-net.ts';
+import { uprightDam } from '#tests/support/exact-nets/upright-dam.ts';
 
 const [parabola, apron, pile] = EXACT_NETS;
 
@@ -104,41 +104,7 @@ describe('the section of a document', () => {
   });
 
   it('takes a dam with ground above its water as unconfined and finds the surface itself', () => {
-    const dam = sketchedNet(
-      [
-        {
-          line: 'submergedFace',
-          water: 'headwater',
-          through: [
-            [0, 0],
-            [0, 10],
-          ],
-        },
-        {
-          line: 'ground',
-          through: [
-            [0, 9.98],
-            [0, 11],
-            [10, 11],
-          ],
-        },
-        {
-          line: 'outflowFace',
-          through: [
-            [10.02, 11],
-            [10, 0],
-          ],
-        },
-        {
-          line: 'impervious',
-          through: [
-            [-0.03, 0],
-            [10.03, 0],
-          ],
-        },
-      ],
-      { headwater: 10, tailwater: null, drops: null },
-    );
+    const dam = uprightDam();
     const section = sectionOfDocument(dam);
     expect(section).toMatchObject({ ok: true, usesPhreaticLine: false });
     const solution = solvedDocument(dam);
