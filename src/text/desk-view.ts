@@ -41,4 +41,5 @@ export const deskViewText = {
   cancelLine: 'Cancel line',
   dismiss: 'Dismiss',
   lineActions: 'Line being drawn',
+  lastStep: 'Last step',
 } as const;

@@ -9,11 +9,14 @@ import type { SheetRenderer } from '../render/sheet-renderer.ts';
 import { finePlaceOf } from '../tools/fine-place.ts';
 import { useFinePlacing } from './use-fine-placing.ts';
 
-const SIDE_PX = 168;
+export const MAGNIFIER_SIDE_PX = 168;
 const ZOOM = 8;
 
 function viewAround(at: SheetPx): Viewport {
-  return centredOn({ zoom: ZOOM, origin: sheetPx(0, 0), widthPx: SIDE_PX, heightPx: SIDE_PX }, at);
+  return centredOn(
+    { zoom: ZOOM, origin: sheetPx(0, 0), widthPx: MAGNIFIER_SIDE_PX, heightPx: MAGNIFIER_SIDE_PX },
+    at,
+  );
 }
 
 type MagnifierProps = {
@@ -57,7 +60,11 @@ export function Magnifier({ store, renderer, follow }: MagnifierProps) {
       title={canPlace ? text.magnifier : undefined}
       tabIndex={canPlace ? 0 : -1}
       className="relative m-0 min-w-0 touch-none border border-ink bg-film p-0"
-      style={{ width: SIDE_PX, height: SIDE_PX, cursor: canPlace ? 'crosshair' : undefined }}
+      style={{
+        width: MAGNIFIER_SIDE_PX,
+        height: MAGNIFIER_SIDE_PX,
+        cursor: canPlace ? 'crosshair' : undefined,
+      }}
       {...placing.handlers}
     >
       <canvas ref={canvas} className="block h-full w-full" />

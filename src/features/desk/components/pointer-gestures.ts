@@ -3,39 +3,55 @@ import type { ViewStore } from '../model/view-store.ts';
 import { sheetZoom, toSheet } from '../model/viewport.ts';
 import type { HostView, ToolHost } from '../tools/tool-host.ts';
 import type { Balloon, Modifiers } from '../tools/tool-types.ts';
+import { fineTravel } from './fine-travel.ts';
+import { createPalmGuard } from './palm-guard.ts';
+import { apart, pinchStep } from './pinch.ts';
+import { attachWheel } from './wheel-and-space.ts';
 
-/** A press that stays within this is a click; a finger rolls more than a mouse. */
-const STEADY_MOUSE_PX = 4;
-const STEADY_TOUCH_PX = 10;
-const REACH_MOUSE_PX = 8;
-const REACH_TOUCH_PX = 20;
+/** A press that stays within this is a click; a finger rolls and a pen slips more than a mouse. */
+const STEADY_PX: Readonly<Record<string, number>> = { touch: 10, pen: 6, mouse: 4 };
+const REACH_PX: Readonly<Record<string, number>> = { touch: 20, pen: 10, mouse: 8 };
+/** While a finger places through the magnified view it reaches no farther than what is seen there to be meant. */
+const REACH_HELD_PX = 5;
 const DOUBLE_CLICK_MS = 400;
-/** Zoom for one notch of a wheel is about 1.15, and finer for a trackpad's small steps. */
-const WHEEL_ZOOM_PER_PX = 0.0014;
-const PINCH_ZOOM_PER_PX = 0.01;
-const PIXELS_PER_LINE = 16;
+const DOUBLE_CLICK_PX: Readonly<Record<string, number>> = { touch: 16, pen: 8, mouse: 5 };
+/** A finger that rests for so long holds what it is to place or to move. */
+const HOLD_MS = 320;
 
 export type GestureTarget = {
   readonly element: HTMLElement;
   readonly views: ViewStore;
   readonly host: ToolHost;
   balloons(): readonly Balloon[];
+  /** True while the tool in hand sets something where the sheet is pressed. */
+  places(): boolean;
   /** Tells where the pointer is, and that it has left (`null`). */
   onPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void;
   onPanning(panning: boolean): void;
+  /** Tells where the finger is that holds something to be placed, and that it has let go (`null`). */
+  onFinger(at: ScreenPx | null): void;
 };
 
-type Mode = 'none' | 'pressed' | 'tool' | 'pan';
+/** `placing`: what is pressed follows the pointer and is set where it is let go; `tool`: the tool keeps the pointer. */
+type Mode = 'none' | 'pressed' | 'placing' | 'tool' | 'pan';
+const NEVER = { at: screenPx(-99, -99), time: Number.NEGATIVE_INFINITY };
 
-/** Turns pointers, wheel and pinch into panning, zooming and tool events. Gives a function that ends it. */
+/**
+ * Turns pointers, wheel and pinch into panning, zooming and tool events. A mouse presses at once. One finger pans, a
+ * tap places, and a finger that rests takes hold: it then moves what it holds, finely while it is slow. A pen places
+ * and draws where it is let go, and while it is near, touches are the palm. Gives a function that ends it.
+ */
 export function attachGestures(target: GestureTarget): () => void {
   const { element, views, host } = target;
   const fingers = new Map<number, ScreenPx>();
+  const palms = createPalmGuard();
   let mode: Mode = 'none';
   let pressedAt: ScreenPx = screenPx(0, 0);
-  let lastAt: ScreenPx = screenPx(0, 0);
-  let lastClick = { at: screenPx(-99, -99), time: 0 };
-  let spaceHeld = false;
+  let last = { at: screenPx(0, 0), time: 0 };
+  /** The place a finger holds, which a slow finger moves by less than its own way; null while none does. */
+  let held: ScreenPx | null = null;
+  let holdTimer: ReturnType<typeof setTimeout> | undefined;
+  let lastClick = NEVER;
 
   const placeOf = (event: { clientX: number; clientY: number }): ScreenPx => {
     const box = element.getBoundingClientRect();
@@ -47,156 +63,199 @@ export function attachGestures(target: GestureTarget): () => void {
   const sheetAt = (at: ScreenPx) => toSheet(views.getState().view, at);
   const viewFor = (pointerType: string): HostView => ({
     zoom: sheetZoom(views.getState().view),
-    reachPx: pointerType === 'touch' ? REACH_TOUCH_PX : REACH_MOUSE_PX,
+    reachPx: held === null ? (REACH_PX[pointerType] ?? 8) : REACH_HELD_PX,
     balloons: target.balloons(),
   });
+  const steadyPx = (event: PointerEvent) => STEADY_PX[event.pointerType] ?? 4;
 
   function setMode(next: Mode): void {
     if ((next === 'pan') !== (mode === 'pan')) target.onPanning(next === 'pan');
     mode = next;
   }
 
+  const tool = (type: 'press' | 'move' | 'release', at: ScreenPx, event: PointerEvent) =>
+    host.handle({ type, at: sheetAt(at), keys: keysOf(event) }, viewFor(event.pointerType));
+
   function press(event: PointerEvent): void {
-    if (event.target instanceof Node && event.target !== element && isControl(event.target)) return;
+    if (isControl(event.target, element)) return;
+    if (event.pointerType === 'pen') leaveToPen(event);
+    else if (palms.isPalm(event)) return;
     element.focus({ preventScroll: true });
     element.setPointerCapture(event.pointerId);
     const at = placeOf(event);
-    if (event.pointerType === 'touch') fingers.set(event.pointerId, at);
+    if (event.pointerType === 'touch') {
+      palms.began(event.pointerId);
+      fingers.set(event.pointerId, at);
+    }
     if (fingers.size > 1) {
       beginPinch(event);
       return;
     }
     pressedAt = at;
-    lastAt = at;
-    if (event.button === 1 || (event.button === 0 && spaceHeld)) {
+    last = { at, time: event.timeStamp };
+    if (event.button === 1 || (event.button === 0 && wheel.isSpaceHeld())) {
       event.preventDefault();
       setMode('pan');
+    } else if (event.button === 0 && event.pointerType === 'touch') {
+      setMode('pressed');
+      holdTimer = setTimeout(() => takeHold(event, at), HOLD_MS);
     } else if (event.button === 0) {
-      host.handle({ type: 'press', at: sheetAt(at), keys: keysOf(event) }, viewFor(event.pointerType));
-      setMode(host.grabs() ? 'tool' : 'pressed');
+      tool('press', at, event);
+      const places = event.pointerType === 'pen' && target.places();
+      setMode(host.grabs() ? 'tool' : places ? 'placing' : 'pressed');
     }
   }
 
-  /** A second finger makes it a pinch: whatever the first one began is let go of. */
-  function beginPinch(event: PointerEvent): void {
+  /** The finger has rested: it holds what the tool takes up there, or the place where something is to be set. */
+  function takeHold(event: PointerEvent, at: ScreenPx): void {
+    tool('press', at, event);
+    if (!host.grabs() && !target.places()) return;
+    held = at;
+    setMode(host.grabs() ? 'tool' : 'placing');
+    target.onFinger(at);
+    target.onPointer(sheetAt(at), keysOf(event), viewFor(event.pointerType));
+  }
+
+  function letGoOfHold(): void {
+    clearTimeout(holdTimer);
+    if (held === null) return;
+    held = null;
+    target.onFinger(null);
+  }
+
+  /** What was begun comes to nothing: a second finger makes it a pinch, or a pen has come and it was the palm. */
+  function abandon(event: PointerEvent): void {
+    letGoOfHold();
     if (mode === 'tool') host.handle({ type: 'abandonDrag' }, viewFor(event.pointerType));
+    target.onPointer(null, keysOf(event), viewFor(event.pointerType));
+    setMode('none');
+  }
+
+  function beginPinch(event: PointerEvent): void {
+    abandon(event);
     setMode('pan');
   }
 
+  function leaveToPen(event: PointerEvent): void {
+    const dropped = palms.penSeen(event.timeStamp);
+    if (dropped.length === 0) return;
+    for (const id of dropped) fingers.delete(id);
+    abandon(event);
+  }
+
   function move(event: PointerEvent): void {
+    if (event.pointerType === 'pen') leaveToPen(event);
+    else if (palms.isIgnored(event.pointerId)) return;
     const at = placeOf(event);
     if (fingers.size > 1 && fingers.has(event.pointerId)) {
       pinch(event.pointerId, at);
       return;
     }
-    const steady = event.pointerType === 'touch' ? STEADY_TOUCH_PX : STEADY_MOUSE_PX;
-    if (mode === 'pressed' && distance(at, pressedAt) > steady) setMode('pan');
-    if (mode === 'pan') views.pan(at[0] - lastAt[0], at[1] - lastAt[1]);
-    if (mode === 'tool') {
-      host.handle({ type: 'move', at: sheetAt(at), keys: keysOf(event) }, viewFor(event.pointerType));
+    if (mode === 'pressed' && apart(at, pressedAt) > steadyPx(event)) {
+      letGoOfHold();
+      setMode('pan');
     }
+    if (mode === 'pan') views.pan(at[0] - last.at[0], at[1] - last.at[1]);
+    if (held !== null) {
+      held = fineTravel(held, last.at, at, event.timeStamp - last.time);
+      target.onFinger(at);
+    }
+    const place = held ?? at;
+    if (mode === 'tool') tool('move', place, event);
     if (fingers.has(event.pointerId)) fingers.set(event.pointerId, at);
-    lastAt = at;
-    // While the sheet is dragged the same place of it stays under the pointer.
-    if (mode !== 'pan') target.onPointer(sheetAt(at), keysOf(event), viewFor(event.pointerType));
+    last = { at, time: event.timeStamp };
+    // While the sheet is dragged the same place of it stays under the pointer; a finger only rests before it holds.
+    const follows = mode !== 'pan' && (event.pointerType !== 'touch' || held !== null);
+    if (follows) target.onPointer(sheetAt(place), keysOf(event), viewFor(event.pointerType));
   }
 
   function pinch(pointerId: number, at: ScreenPx): void {
-    const before = [...fingers.values()];
+    const [a, b] = [...fingers.values()];
     fingers.set(pointerId, at);
-    const after = [...fingers.values()];
-    const [a, b] = [before[0]!, before[1]!];
-    const [c, d] = [after[0]!, after[1]!];
-    views.pan((c[0] + d[0] - a[0] - b[0]) / 2, (c[1] + d[1] - a[1] - b[1]) / 2);
-    const factor = distance(c, d) / Math.max(1, distance(a, b));
-    views.zoom(factor, screenPx((c[0] + d[0]) / 2, (c[1] + d[1]) / 2));
+    const [c, d] = [...fingers.values()];
+    const step = pinchStep([a!, b!], [c!, d!]);
+    views.pan(step.dxPx, step.dyPx);
+    views.zoom(step.factor, step.about);
   }
 
   function release(event: PointerEvent): void {
-    const at = placeOf(event);
+    if (event.pointerType === 'pen') leaveToPen(event);
+    const palm = palms.isIgnored(event.pointerId);
+    palms.ended(event.pointerId);
+    if (palm) return;
     const wasPinch = fingers.size > 1;
     fingers.delete(event.pointerId);
     if (wasPinch) {
       // The finger that stays goes on panning from where it is; it does not click when lifted.
-      lastAt = [...fingers.values()][0] ?? at;
+      last = { at: [...fingers.values()][0] ?? placeOf(event), time: event.timeStamp };
       return;
     }
-    const view = viewFor(event.pointerType);
-    const keys = keysOf(event);
-    const steady = event.pointerType === 'touch' ? STEADY_TOUCH_PX : STEADY_MOUSE_PX;
-    const ended = mode;
-    setMode('none');
-    if (ended === 'tool') host.handle({ type: 'release', at: sheetAt(at), keys }, view);
-    const still = distance(at, pressedAt) <= steady;
-    if (ended === 'pressed' || (ended === 'tool' && still)) click(at, keys, view);
-    target.onPointer(event.pointerType === 'touch' ? null : sheetAt(at), keys, view);
+    set(event, held ?? placeOf(event));
   }
 
-  function click(at: ScreenPx, keys: Modifiers, view: HostView): void {
-    const time = performance.now();
-    const again = time - lastClick.time < DOUBLE_CLICK_MS && distance(at, lastClick.at) < STEADY_MOUSE_PX + 1;
-    lastClick = again ? { at: screenPx(-99, -99), time: 0 } : { at, time };
-    host.handle({ type: 'click', at: sheetAt(at), keys, count: again ? 2 : 1 }, view);
+  /** The only pointer is lifted: what the tool held is let go of, or something is set or chosen there. */
+  function set(event: PointerEvent, at: ScreenPx): void {
+    const still = apart(at, pressedAt) <= steadyPx(event);
+    const view = viewFor(event.pointerType);
+    const ended = mode;
+    setMode('none');
+    if (ended === 'pressed' && event.pointerType === 'touch') {
+      // A tap, which has not pressed the tool yet.
+      tool('press', pressedAt, event);
+      if (host.grabs()) tool('release', pressedAt, event);
+    }
+    if (ended === 'tool') tool('release', at, event);
+    const clicks = ended === 'pressed' || ended === 'placing' || (ended === 'tool' && still);
+    if (clicks) click(at, event, view);
+    letGoOfHold();
+    target.onPointer(event.pointerType === 'touch' ? null : sheetAt(at), keysOf(event), view);
+  }
+
+  function click(at: ScreenPx, event: PointerEvent, view: HostView): void {
+    const time = event.timeStamp;
+    const again =
+      time - lastClick.time < DOUBLE_CLICK_MS &&
+      apart(at, lastClick.at) < (DOUBLE_CLICK_PX[event.pointerType] ?? 5);
+    lastClick = again ? NEVER : { at, time };
+    host.handle({ type: 'click', at: sheetAt(at), keys: keysOf(event), count: again ? 2 : 1 }, view);
   }
 
   function cancel(event: PointerEvent): void {
+    const palm = palms.isIgnored(event.pointerId);
+    palms.ended(event.pointerId);
     fingers.delete(event.pointerId);
-    if (mode === 'tool') host.handle({ type: 'abandonDrag' }, viewFor(event.pointerType));
-    setMode('none');
+    if (!palm) abandon(event);
   }
 
   function leave(event: PointerEvent): void {
     if (mode === 'none') target.onPointer(null, keysOf(event), viewFor(event.pointerType));
   }
 
-  function wheel(event: WheelEvent): void {
-    event.preventDefault();
-    const unit = event.deltaMode === WheelEvent.DOM_DELTA_LINE ? PIXELS_PER_LINE : 1;
-    const rate = event.ctrlKey ? PINCH_ZOOM_PER_PX : WHEEL_ZOOM_PER_PX;
-    views.zoom(Math.exp(-event.deltaY * unit * rate), placeOf(event));
+  /** A finger that rests would open the browser's menu over what it holds. */
+  function menu(event: Event): void {
+    if (fingers.size > 0) event.preventDefault();
   }
 
-  function space(event: KeyboardEvent): void {
-    if (event.code !== 'Space' || event.target !== element) return;
-    event.preventDefault();
-    spaceHeld = event.type === 'keydown';
-  }
-
-  const forget = () => {
-    spaceHeld = false;
-  };
-  element.addEventListener('pointerdown', press);
-  element.addEventListener('pointermove', move);
-  element.addEventListener('pointerup', release);
-  element.addEventListener('pointercancel', cancel);
-  element.addEventListener('pointerleave', leave);
-  element.addEventListener('wheel', wheel, { passive: false });
-  element.addEventListener('keydown', space);
-  element.addEventListener('keyup', space);
-  element.addEventListener('blur', forget);
+  const wheel = attachWheel(element, views, placeOf);
+  const listeners = { pointerdown: press, pointermove: move, pointerup: release, pointercancel: cancel };
+  for (const [type, listen] of Object.entries({ ...listeners, pointerleave: leave, contextmenu: menu }))
+    element.addEventListener(type, listen as EventListener);
   return () => {
-    element.removeEventListener('pointerdown', press);
-    element.removeEventListener('pointermove', move);
-    element.removeEventListener('pointerup', release);
-    element.removeEventListener('pointercancel', cancel);
-    element.removeEventListener('pointerleave', leave);
-    element.removeEventListener('wheel', wheel);
-    element.removeEventListener('keydown', space);
-    element.removeEventListener('keyup', space);
-    element.removeEventListener('blur', forget);
+    clearTimeout(holdTimer);
+    wheel.end();
+    for (const [type, listen] of Object.entries({ ...listeners, pointerleave: leave, contextmenu: menu }))
+      element.removeEventListener(type, listen as EventListener);
   };
 }
 
 /** Buttons and panels that lie over the sheet keep their own pointers. */
-function isControl(node: Node): boolean {
-  const element = node instanceof Element ? node : node.parentElement;
-  return element?.closest('[data-over-sheet]') !== null;
+function isControl(pressed: EventTarget | null, sheet: HTMLElement): boolean {
+  if (pressed === sheet || pressed === null) return false;
+  const node = pressed as Node;
+  const element = 'closest' in node ? (node as Element) : node.parentElement;
+  return (element?.closest('[data-over-sheet]') ?? null) !== null;
 }
 
 function keysOf(event: PointerEvent): Modifiers {
   return { shift: event.shiftKey, alt: event.altKey, ctrl: event.ctrlKey || event.metaKey };
-}
-
-function distance(a: ScreenPx, b: ScreenPx): number {
-  return Math.hypot(a[0] - b[0], a[1] - b[1]);
 }

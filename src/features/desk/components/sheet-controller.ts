@@ -1,4 +1,4 @@
-import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
+import { type ScreenPx, type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { IDENTITY, inverted, mapped } from '#shared/compute/linear-map.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
@@ -30,6 +30,8 @@ export type SheetControllerOptions = {
   /** Place being set with the magnified view, or null. */
   onFollow(at: SheetPx | null): void;
   onPanning(panning: boolean): void;
+  /** Where a finger holds something to be placed, or null: the magnified view then stands clear of it. */
+  onFinger(at: ScreenPx | null): void;
 };
 
 export type SheetController = {
@@ -48,6 +50,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   const host = createToolHost(store);
   let pointer: { at: SheetPx; keys: Modifiers; view: HostView } | null = null;
   let overlay: ToolOverlay = NO_OVERLAY;
+  let fingerHolds = false;
   let sceneDue = false;
   let scene: readonly SceneItem[] = [];
   let active: readonly SceneItem[] = [];
@@ -99,13 +102,25 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
         : host.overlay(pointer.at, pointer.keys, { ...pointer.view, zoom: sheetZoom(view()) });
     const underPointer = overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null);
     renderer.showActive([...active, ...itemsThrough(underPointer, view().seenAs ?? null)]);
-    options.onFollow(overlay.magnify && pointer !== null ? (overlay.snap?.at ?? pointer.at) : null);
+    const magnified = (overlay.magnify || fingerHolds) && pointer !== null;
+    options.onFollow(magnified ? (overlay.snap?.at ?? pointer!.at) : null);
   }
 
   function followPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void {
     pointer = at === null ? null : { at, keys, view };
     store.setPointer(at === null ? null : [at[0], at[1]]);
     showOverlay();
+  }
+
+  function holdByFinger(at: ScreenPx | null): void {
+    fingerHolds = at !== null;
+    options.onFinger(at);
+  }
+
+  /** A note may be written where nothing may be changed. */
+  function places(): boolean {
+    const { tool, readOnly } = store.getState();
+    return tool === 'note' || (tool !== 'select' && !readOnly);
   }
 
   function key(event: KeyboardEvent): void {
@@ -125,8 +140,10 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       views,
       host,
       balloons,
+      places,
       onPointer: followPointer,
       onPanning: options.onPanning,
+      onFinger: holdByFinger,
     }),
     store.subscribe((state, before) => looksDiffer(state, before) && dueScene()),
     store.onLookAt((at) => views.lookAt(sheetPx(...at))),

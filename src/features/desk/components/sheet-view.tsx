@@ -2,15 +2,16 @@ import { useEffect, useId, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { classNames } from '#client/components/class-names.ts';
 import { deskViewText as text } from '#client/text/desk-view.ts';
-import type { SheetPx } from '#shared/compute/frames.ts';
+import type { ScreenPx, SheetPx } from '#shared/compute/frames.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import type { ToolId } from '../model/tool-choice.ts';
 import { createViewStore } from '../model/view-store.ts';
 import { type SheetFrame, toScreen, type Viewport } from '../model/viewport.ts';
 import type { NoteBalloon } from '../render/build-scene.ts';
+import { aboveFinger } from './above-finger.ts';
 import { DraftActions } from './draft-actions.tsx';
-import { Magnifier } from './magnifier.tsx';
+import { MAGNIFIER_SIDE_PX, Magnifier } from './magnifier.tsx';
 import { PointerReadout } from './pointer-readout.tsx';
 import { SectionViewSwitch } from './section-view-switch.tsx';
 import { createSheetController, type SheetController } from './sheet-controller.ts';
@@ -41,6 +42,7 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
   const [controller, setController] = useState<SheetController | null>(null);
   const [follow, setFollow] = useState<SheetPx | null>(null);
   const [panning, setPanning] = useState(false);
+  const [finger, setFinger] = useState<ScreenPx | null>(null);
   const tool = useStore(store, (state) => state.tool);
   const helpId = useId();
 
@@ -56,6 +58,7 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       notes: () => shownNotes.current,
       onFollow: setFollow,
       onPanning: setPanning,
+      onFinger: setFinger,
     });
     setController(made);
     return () => {
@@ -97,9 +100,16 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
         <DraftActions store={store} onAction={(action) => controller?.act(action)} />
         <div className={isUnderMagnifier(follow, views.getState().view) ? 'order-first' : 'ml-auto'}>
-          {controller && <Magnifier store={store} renderer={controller.renderer} follow={follow} />}
+          {controller && finger === null && (
+            <Magnifier store={store} renderer={controller.renderer} follow={follow} />
+          )}
         </div>
       </div>
+      {controller && finger !== null && (
+        <div className="absolute" style={aboveFinger(finger, MAGNIFIER_SIDE_PX, views.getState().view)}>
+          <Magnifier store={store} renderer={controller.renderer} follow={follow} />
+        </div>
+      )}
     </div>
   );
 }
