@@ -7,6 +7,8 @@ export const deskCanvasText = {
   nothingToRedo: 'There is nothing to do again.',
   changedSince: (label: string) =>
     `Cannot take back “${label}”: it was changed by someone else since. The step before it can be taken back next.`,
+  severalRefused: (more: number, first: string) =>
+    `${first} So it was with ${more} more ${more === 1 ? 'step' : 'steps'}.`,
   undone: (label: string) => `Took back: ${label}`,
   redone: (label: string) => `Did again: ${label}`,
   keptMine: 'Put my version on top',

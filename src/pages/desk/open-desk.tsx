@@ -100,6 +100,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             <ToolPalette
               store={store}
               layout={narrow ? 'row' : 'column'}
+              keeping={session.history}
               className={narrow ? '' : 'flex-1'}
             />
           }

@@ -3,8 +3,10 @@ import { classNames } from '#client/components/class-names.ts';
 import { type PaletteTool, deskPaletteText as text } from '#client/text/desk-palette.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { BOUNDARY_KINDS, type BoundaryKind } from '../model/tool-choice.ts';
+import type { HistoryKeeping } from '../saving/keep-history.ts';
 import { TOOL_KEYS, WATER_KEY } from './desk-keys.ts';
 import { FirstGuess } from './first-guess.tsx';
+import { HistorySteps } from './history-steps.tsx';
 import { ToolHint } from './tool-hint.tsx';
 import { ToolIcon } from './tool-icons.tsx';
 
@@ -18,11 +20,13 @@ type ToolPaletteProps = {
   store: DeskStore;
   /** `column` beside the sheet, `row` above or below it on a narrow screen. */
   layout?: 'column' | 'row';
+  /** What keeps the steps over a reload; null where nothing may be changed. */
+  keeping?: HistoryKeeping | null;
   className?: string;
 };
 
 /** The tools with their keys, and at the foot what the tool in hand does now. Pressing the tool in hand lays it down. */
-export function ToolPalette({ store, layout = 'column', className }: ToolPaletteProps) {
+export function ToolPalette({ store, layout = 'column', keeping = null, className }: ToolPaletteProps) {
   const column = layout === 'column';
   return (
     <nav
@@ -45,7 +49,7 @@ export function ToolPalette({ store, layout = 'column', className }: ToolPalette
           {group.tools.includes('boundary') && <BoundaryKinds store={store} column={column} />}
         </div>
       ))}
-      <HistoryButtons store={store} column={column} />
+      <HistoryButtons store={store} column={column} keeping={keeping} />
       {column && <ToolHint store={store} />}
       {column && <FirstGuess store={store} />}
     </nav>
@@ -134,11 +138,19 @@ function BoundaryChoice({ choice, chosen, column, onChoose }: BoundaryChoiceProp
   );
 }
 
-function HistoryButtons({ store, column }: { store: DeskStore; column: boolean }) {
+function HistoryButtons({
+  store,
+  column,
+  keeping,
+}: {
+  store: DeskStore;
+  column: boolean;
+  keeping: HistoryKeeping | null;
+}) {
   const { undoLabel, redoLabel } = useStore(store, (state) => state.history);
   const readOnly = useStore(store, (state) => state.readOnly);
   if (readOnly) return null;
-  const look = 'border-0 bg-transparent px-4 py-1.5 text-left hover:bg-hover disabled:opacity-55 touch';
+  const look = 'border-0 bg-transparent py-1.5 pr-1 pl-4 text-left hover:bg-hover disabled:opacity-55 touch';
   return (
     <div className={column ? 'mt-auto flex border-t border-rule-2 pt-2' : 'flex'}>
       <button
@@ -151,6 +163,7 @@ function HistoryButtons({ store, column }: { store: DeskStore; column: boolean }
       >
         {text.undo}
       </button>
+      <HistorySteps store={store} from="done" keeping={keeping} />
       <button
         type="button"
         className={look}
@@ -161,6 +174,7 @@ function HistoryButtons({ store, column }: { store: DeskStore; column: boolean }
       >
         {text.redo}
       </button>
+      <HistorySteps store={store} from="undone" keeping={keeping} />
     </div>
   );
 }

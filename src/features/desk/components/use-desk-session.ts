@@ -54,7 +54,7 @@ export function useDeskSession(netId: string, personId: string): OpenDesk {
           if (state === 'writer') void show((detail) => openToWrite(detail, personId, true));
           if (state === 'elsewhere') void show((detail) => openToRead(detail, 'elsewhere'));
         },
-        handOver: async () => current?.saving?.stop(),
+        handOver: async () => current?.handOver(),
       });
     }
 

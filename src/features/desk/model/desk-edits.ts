@@ -3,15 +3,7 @@ import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { ChangesDto, OpOutcome } from '#shared/contract/nets.ts';
 import type { CommandOp, DeskCommand, RunResult } from './desk-state.ts';
 import { applyOps, type LocalOp } from './document-ops.ts';
-import {
-  EMPTY_HISTORY,
-  type History,
-  type HistoryStep,
-  historyLabels,
-  isUntouched,
-  stepOf,
-  withStep,
-} from './history.ts';
+import { EMPTY_HISTORY, type History, type HistoryStep, isUntouched, stepOf, withStep } from './history.ts';
 import {
   acknowledgeOutcomes,
   baseVersionOf,
@@ -25,10 +17,10 @@ import {
 
 export type DeskEdits = {
   shared(): SharedDocument;
-  labels(): { undoLabel: string | null; redoLabel: string | null };
+  history(): History;
   run(label: string, ops: readonly LocalOp[]): RunResult;
-  /** Takes the newest step done back, or does the newest step taken back again. */
-  takeStep(from: 'done' | 'undone'): RunResult;
+  /** Takes the newest `count` steps done back, or does as many taken back again; the reasons for those that cannot be. */
+  takeSteps(from: 'done' | 'undone', count: number): string[];
   receive(changes: ChangesDto, ownClientId: string | null): void;
   acknowledge(outcomes: readonly OpOutcome[], through: number): void;
   /** Puts changes back without telling of them; gives the command's number. */
@@ -44,9 +36,13 @@ const ACCEPTED: RunResult = { ok: true };
  * Changes of one document: what was done and can be taken back, and how it stands to the server's copy. `tell` gets
  * each command of ours that the server has to be sent.
  */
-export function createDeskEdits(document: FlowNetDocument, tell: (command: DeskCommand) => void): DeskEdits {
+export function createDeskEdits(
+  document: FlowNetDocument,
+  tell: (command: DeskCommand) => void,
+  earlier: History = EMPTY_HISTORY,
+): DeskEdits {
   let shared: SharedDocument = sharedDocumentOf(document);
-  let history: History = EMPTY_HISTORY;
+  let history = earlier;
   let lastNumber = 0;
 
   function refusal(ops: readonly LocalOp[]): RunResult | null {
@@ -84,9 +80,28 @@ export function createDeskEdits(document: FlowNetDocument, tell: (command: DeskC
     tell({ number: lastNumber, label: text.keptMine, ops: [op] });
   }
 
+  function takeStep(from: 'done' | 'undone'): RunResult {
+    const step = history[from].at(-1);
+    if (step === undefined) {
+      return { ok: false, reason: from === 'done' ? text.nothingToUndo : text.nothingToRedo };
+    }
+    const refused = refusal(step.inverse);
+    if (refused !== null) return refused;
+    history = { ...history, [from]: history[from].slice(0, -1) };
+    // A step that someone else has built on is passed over, so that the ones before it can still be taken back.
+    if (!isUntouched(step, shared.document)) return { ok: false, reason: text.changedSince(step.label) };
+    const label = from === 'done' ? text.undone(step.label) : text.redone(step.label);
+    const applied = apply(label, step.inverse);
+    if (applied === null) return ACCEPTED;
+    const other = from === 'done' ? 'undone' : 'done';
+    history = { ...history, [other]: [...history[other], { ...applied.step, label: step.label }] };
+    tell(applied.command);
+    return ACCEPTED;
+  }
+
   return {
     shared: () => shared,
-    labels: () => historyLabels(history),
+    history: () => history,
     run(label, ops) {
       const refused = refusal(ops);
       if (refused !== null) return refused;
@@ -96,25 +111,17 @@ export function createDeskEdits(document: FlowNetDocument, tell: (command: DeskC
       tell(applied.command);
       return ACCEPTED;
     },
-    takeStep(from) {
-      const step = history[from].at(-1);
-      if (step === undefined) {
-        return { ok: false, reason: from === 'done' ? text.nothingToUndo : text.nothingToRedo };
+    takeSteps(from, count) {
+      const refused: string[] = [];
+      for (let i = 0; i < count; i += 1) {
+        const left = history[from].length;
+        const result = takeStep(from);
+        if (result.ok) continue;
+        refused.push(result.reason);
+        // A step that is not passed over stands before all others.
+        if (history[from].length === left) break;
       }
-      const refused = refusal(step.inverse);
-      if (refused !== null) return refused;
-      history = { ...history, [from]: history[from].slice(0, -1) };
-      // A step that someone else has built on is passed over, so that the ones before it can still be taken back.
-      if (!isUntouched(step, shared.document)) return { ok: false, reason: text.changedSince(step.label) };
-      const applied = apply(
-        from === 'done' ? text.undone(step.label) : text.redone(step.label),
-        step.inverse,
-      );
-      if (applied === null) return ACCEPTED;
-      const other = from === 'done' ? 'undone' : 'done';
-      history = { ...history, [other]: [...history[other], { ...applied.step, label: step.label }] };
-      tell(applied.command);
-      return ACCEPTED;
+      return refused;
     },
     receive(changes, ownClientId) {
       shared = receiveChanges(shared, changes.entities, ownClientId);

@@ -4,11 +4,13 @@ import type { ChangesDto, OpOutcome } from '#shared/contract/nets.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { LocalOp } from './document-ops.ts';
 import type { GuideOwner, Guides, GuidesByOwner } from './guides.ts';
+import type { History } from './history.ts';
 import type { DeskIntent } from './intents.ts';
 import type { ReadingPort } from './reading-port.ts';
 import type { Selection } from './selection.ts';
 import type { Conflict } from './shared-edits.ts';
 import type { BoundaryKind, ToolId } from './tool-choice.ts';
+import type { ViewAids } from './view-aids.ts';
 
 /** Kinds that can be hidden on the sheet. */
 export type HideableKind = LineKind | 'readingPoint' | 'knownPoint' | 'profile' | 'note';
@@ -51,9 +53,15 @@ export type DeskState = {
   readonly selection: Selection;
   readonly pointerAt: SheetPoint | null;
   readonly hiddenKinds: readonly HideableKind[];
+  /** Kinds that are shown and snapped to, but neither picked nor changed. */
+  readonly lockedKinds: readonly HideableKind[];
+  /** What helps in tracing and how the sheet looks: a person's own choice, no part of the net. */
+  readonly aids: ViewAids;
   /** What is shown over the sheet besides the net. */
   readonly guides: GuidesByOwner;
   readonly history: { readonly undoLabel: string | null; readonly redoLabel: string | null };
+  /** All steps that can be taken back or done again. */
+  readonly steps: History;
   readonly draft: Draft | null;
   /** Entities as they look while something is being dragged and is not let go yet. */
   readonly preview: Readonly<Record<string, DocumentEntity>>;
@@ -67,14 +75,17 @@ export type DeskState = {
 
 export type DeskActions = {
   run(label: string, ops: readonly LocalOp[]): RunResult;
-  undo(): RunResult;
-  redo(): RunResult;
+  /** Takes the newest step back, or the newest `count` of them; those that cannot be are passed over. */
+  undo(count?: number): RunResult;
+  redo(count?: number): RunResult;
   setTool(tool: ToolId, boundary?: BoundaryKind): void;
   select(selection: SelectionInput): void;
   setPointer(at: SheetPoint | null): void;
   setDraft(draft: Draft | null): void;
   setPreview(preview: Readonly<Record<string, DocumentEntity>>): void;
   setHidden(kinds: readonly HideableKind[]): void;
+  setLocked(kinds: readonly HideableKind[]): void;
+  setAids(aids: Partial<ViewAids>): void;
   /** Shows guides over the sheet, or takes an owner's away with null. */
   setGuides(owner: GuideOwner, guides: Guides | null): void;
   setReadOnly(readOnly: boolean): void;
@@ -108,4 +119,6 @@ export type DeskStoreOptions = {
   /** The saving part's client id, to know our own changes when they come back. */
   clientId?: string;
   newId?: () => string;
+  /** Steps of earlier visits that can still be taken back. */
+  history?: History;
 };

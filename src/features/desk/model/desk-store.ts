@@ -10,13 +10,16 @@ import type {
   DeskStore,
   DeskStoreOptions,
   Draft,
+  HideableKind,
   RunResult,
 } from './desk-state.ts';
 import { withGuides } from './guides.ts';
+import { EMPTY_HISTORY, historyLabels } from './history.ts';
 import type { DeskIntent } from './intents.ts';
 import { createListeners } from './listeners.ts';
 import { reopenedLine } from './reopened-line.ts';
-import { NO_SELECTION, prunedSelection } from './selection.ts';
+import { NO_SELECTION, prunedSelection, type Selection, withoutKinds } from './selection.ts';
+import { FIRST_AIDS } from './view-aids.ts';
 
 type Opened = { document: FlowNetDocument; changeNumber?: number };
 
@@ -34,8 +37,11 @@ function firstState(opened: Opened, options: DeskStoreOptions): DeskState {
     selection: NO_SELECTION,
     pointerAt: null,
     hiddenKinds: [],
+    lockedKinds: [],
+    aids: FIRST_AIDS,
     guides: {},
-    history: { undoLabel: null, redoLabel: null },
+    history: historyLabels(options.history ?? EMPTY_HISTORY),
+    steps: options.history ?? EMPTY_HISTORY,
     draft: null,
     preview: {},
     conflicts: {},
@@ -50,7 +56,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
   const commands = createListeners<DeskCommand>();
   const intents = createListeners<DeskIntent>();
   const looks = createListeners<SheetPoint>();
-  const edits = createDeskEdits(opened.document, commands.tell);
+  const edits = createDeskEdits(opened.document, commands.tell, options.history);
   const store = createStore<DeskState>(() => firstState(opened, options));
 
   const endAnswers = options.reader?.onAnswer((revision, reading) => {
@@ -78,7 +84,8 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
       documentRevision,
       pending,
       conflicts,
-      history: edits.labels(),
+      history: historyLabels(edits.history()),
+      steps: edits.history(),
       selection: prunedSelection(before.selection, document),
       draft: keptDraft(before.draft, document),
     });
@@ -92,18 +99,28 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     return result;
   }
 
-  function takeStep(from: 'done' | 'undone'): RunResult {
+  function takeSteps(from: 'done' | 'undone', count: number): RunResult {
     const { document, draft, tool } = store.getState();
-    const result = edit(() => edits.takeStep(from));
+    const result = edit(() => {
+      const [refused, ...more] = edits.takeSteps(from, count);
+      if (refused === undefined) return { ok: true };
+      return { ok: false, reason: more.length === 0 ? refused : text.severalRefused(more.length, refused) };
+    });
     const lineId = draft === null ? reopenedLine(document, edits.shared().document, tool) : null;
     if (lineId !== null) actions.setDraft({ lineId, atStart: false });
     return result;
   }
 
+  /** The selection without things of kinds that can no longer be picked. */
+  function selectionOutside(kinds: readonly HideableKind[]): Selection {
+    const { selection, document } = store.getState();
+    return withoutKinds(selection, kinds, document);
+  }
+
   const actions: DeskActions = {
     run: (label, ops) => edit(() => edits.run(label, ops)),
-    undo: () => takeStep('done'),
-    redo: () => takeStep('undone'),
+    undo: (count = 1) => takeSteps('done', count),
+    redo: (count = 1) => takeSteps('undone', count),
     setTool(tool, boundary) {
       const { boundaryKind, readOnly } = store.getState();
       if (readOnly && tool !== 'select' && tool !== 'note') return;
@@ -118,7 +135,9 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     setPreview: (preview) => store.setState({ preview }),
     setGuides: (owner, guides) =>
       store.setState({ guides: withGuides(store.getState().guides, owner, guides) }),
-    setHidden: (hiddenKinds) => store.setState({ hiddenKinds }),
+    setHidden: (hiddenKinds) => store.setState({ hiddenKinds, selection: selectionOutside(hiddenKinds) }),
+    setLocked: (lockedKinds) => store.setState({ lockedKinds, selection: selectionOutside(lockedKinds) }),
+    setAids: (aids) => store.setState({ aids: { ...store.getState().aids, ...aids } }),
     setReadOnly: (readOnly) => store.setState({ readOnly, draft: null, preview: {}, tool: 'select' }),
     setNotice: (notice) => store.setState({ notice }),
     receive(changes) {

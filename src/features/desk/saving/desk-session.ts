@@ -5,6 +5,7 @@ import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
 import { createReadingClient } from '#client/features/desk/model/reading-client.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
 import { createCatchUp } from './catch-up.ts';
+import { type HistoryKeeping, keepHistory, loadSteps } from './keep-history.ts';
 import { openQueueStorage, type QueueStorage, queueOwner } from './queue-storage.ts';
 import type { SaveQueue } from './save-queue.ts';
 import { type Saving, startSaving } from './saving.ts';
@@ -20,8 +21,12 @@ const LEAVE_WITHIN_MS = 3000;
 export interface DeskSession {
   store: DeskStore;
   saving: Saving | null;
+  /** What keeps the steps that can be taken back; null where nothing may be changed. */
+  history: HistoryKeeping | null;
   readOnly: ReadOnlyReason;
   catchUp: () => Promise<void>;
+  /** Gives the right to write up: writes what is left to the disk, where another tab takes it up. */
+  handOver(): Promise<void>;
   /** Ends saving after what is left is on the disk, and frees the reader. Sends nothing more: another tab may write. */
   close(): Promise<void>;
   /** As `close`, for a page that is left: what waits is sent first, so that it need not wait for the next visit. */
@@ -36,7 +41,7 @@ export function reasonAgainstWriting(detail: NetDetailDto): 'noPart' | 'putAway'
 /** A net that is only looked at. */
 export function openToRead(detail: NetDetailDto, readOnly: NonNullable<ReadOnlyReason>): DeskSession {
   const store = createDeskStore(detail, { reader: createReadingClient(), readOnly: true });
-  return sessionOf(detail.net.id, store, null, readOnly);
+  return sessionOf(detail.net.id, { store, saving: null, history: null, readOnly });
 }
 
 /** A net to write on, with what an earlier visit left unsent laid over it. */
@@ -47,8 +52,13 @@ export async function openToWrite(
 ): Promise<DeskSession> {
   const owner = queueOwner(personId, detail.net.id);
   const { storage, kept } = await openKept(owner, mayKeep);
+  const steps = await loadSteps(owner, mayKeep);
   const clientId = kept?.clientId ?? newUuid();
-  const store = createDeskStore(detail, { reader: createReadingClient(), clientId });
+  const store = createDeskStore(detail, {
+    reader: createReadingClient(),
+    clientId,
+    history: steps.history,
+  });
   const saving = startSaving({
     desk: store,
     storage,
@@ -58,7 +68,8 @@ export async function openToWrite(
     newClientId: () => clientId,
     now: Date.now,
   });
-  return sessionOf(detail.net.id, store, saving, null);
+  const history = keepHistory(store, owner, steps, Date.now);
+  return sessionOf(detail.net.id, { store, saving, history, readOnly: null });
 }
 
 /** A browser that keeps nothing (private windows of some) still lets one work: the state says so. */
@@ -77,18 +88,19 @@ async function openKept(
 
 function sessionOf(
   netId: string,
-  store: DeskStore,
-  saving: Saving | null,
-  readOnly: ReadOnlyReason,
+  parts: Pick<DeskSession, 'store' | 'saving' | 'history' | 'readOnly'>,
 ): DeskSession {
+  const { store, saving, history } = parts;
+  const handOver = async () => {
+    await Promise.all([saving?.stop(), history?.stop()]);
+  };
   const close = async () => {
-    await saving?.stop();
+    await handOver();
     store.close();
   };
   return {
-    store,
-    saving,
-    readOnly,
+    ...parts,
+    handOver,
     catchUp: createCatchUp(store, (since) => fetchChanges(netId, since)),
     close,
     async leave() {

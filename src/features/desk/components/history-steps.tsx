@@ -1,0 +1,144 @@
+import { useId, useRef, useState } from 'react';
+import { useStore } from 'zustand';
+import { classNames } from '#client/components/class-names.ts';
+import { historyText as text } from '#client/text/history.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+import type { HistoryKeeping } from '../saving/keep-history.ts';
+
+/** Longer lists are shown in parts of so many. */
+const PART = 60;
+
+interface HistoryStepsProps {
+  store: DeskStore;
+  from: 'done' | 'undone';
+  keeping: HistoryKeeping | null;
+}
+
+/** A button that lists the steps by name, the newest first; pressing one takes it and all above it. */
+export function HistorySteps({ store, from, keeping }: HistoryStepsProps) {
+  const steps = useStore(store, (state) => state.steps[from]);
+  const [open, setOpen] = useState(false);
+  const listId = useId();
+  const button = useRef<HTMLButtonElement>(null);
+  const list = useRef<HTMLDivElement>(null);
+  const back = from === 'done';
+  return (
+    <>
+      <button
+        ref={button}
+        type="button"
+        aria-label={back ? text.undoSteps : text.redoSteps}
+        title={back ? text.undoSteps : text.redoSteps}
+        aria-expanded={open}
+        disabled={steps.length === 0}
+        popoverTarget={listId}
+        className="border-0 bg-transparent px-1.5 py-1.5 text-ink-2 hover:bg-hover disabled:opacity-55 touch"
+      >
+        <svg width="9" height="9" viewBox="0 0 9 9" aria-hidden="true">
+          <path d="M1 6 4.5 2.5 8 6" fill="none" stroke="currentColor" strokeWidth="1.4" />
+        </svg>
+      </button>
+      <div
+        ref={list}
+        id={listId}
+        popover="auto"
+        role="dialog"
+        aria-label={back ? text.undoList : text.redoList}
+        className="m-0 max-h-[60dvh] w-[300px] max-w-[calc(100vw-16px)] overflow-y-auto rounded-sheet border border-ink bg-film p-0 text-ink"
+        onToggle={(event) => {
+          const shown = event.newState === 'open';
+          setOpen(shown);
+          if (shown && button.current) placeAbove(event.currentTarget, button.current);
+        }}
+      >
+        {open ? (
+          <StepList
+            steps={steps.map(({ label }) => label || text.unnamed).reverse()}
+            back={back}
+            onTake={(count) => {
+              list.current?.hidePopover();
+              if (back) store.undo(count);
+              else store.redo(count);
+            }}
+          />
+        ) : null}
+        {open && back && keeping ? <KeptNote keeping={keeping} /> : null}
+      </div>
+    </>
+  );
+}
+
+/** The list lies over everything else; it stands above its button, or below where there is more room. */
+function placeAbove(list: HTMLElement, button: HTMLElement): void {
+  const { left, top, bottom } = button.getBoundingClientRect();
+  list.style.left = `${Math.max(8, Math.min(left, window.innerWidth - list.offsetWidth - 8))}px`;
+  const above = top > window.innerHeight - bottom;
+  list.style.top = above ? 'auto' : `${bottom + 4}px`;
+  list.style.bottom = above ? `${window.innerHeight - top + 4}px` : 'auto';
+}
+
+function StepList({
+  steps,
+  back,
+  onTake,
+}: {
+  steps: readonly string[];
+  back: boolean;
+  onTake: (count: number) => void;
+}) {
+  const [shown, setShown] = useState(PART);
+  const [reach, setReach] = useState(1);
+  return (
+    <>
+      <p
+        aria-live="polite"
+        className="sticky top-0 m-0 border-b border-rule bg-film px-3 py-1.5 text-sm text-ink-2"
+      >
+        {back ? text.undoCount(reach) : text.redoCount(reach)}
+      </p>
+      <ol className="m-0 list-none p-0">
+        {steps.slice(0, shown).map((label, i) => {
+          const count = i + 1;
+          return (
+            // The place from the top is what a step is here: the same words may come twice.
+            // biome-ignore lint/suspicious/noArrayIndexKey: see above
+            <li key={i}>
+              <button
+                type="button"
+                aria-label={back ? text.undoTo(label, count) : text.redoTo(label, count)}
+                className={classNames(
+                  'block w-full border-0 px-3 py-1 text-left first-letter:uppercase touch',
+                  count <= reach ? 'bg-chosen' : 'bg-transparent',
+                )}
+                onPointerEnter={() => setReach(count)}
+                onFocus={() => setReach(count)}
+                onClick={() => onTake(count)}
+              >
+                {label}
+              </button>
+            </li>
+          );
+        })}
+      </ol>
+      {steps.length > shown ? (
+        <button
+          type="button"
+          className="block w-full border-0 border-t border-rule bg-transparent px-3 py-1.5 text-left text-sm underline touch"
+          onClick={() => setShown(shown + PART)}
+        >
+          {text.more(Math.min(PART, steps.length - shown))}
+        </button>
+      ) : null}
+    </>
+  );
+}
+
+function KeptNote({ keeping }: { keeping: HistoryKeeping }) {
+  const { kept, dropped } = useStore(keeping.facts);
+  return (
+    <p className="m-0 border-t border-rule px-3 py-1.5 text-sm text-ink-2">
+      {kept ? text.kept : text.notKept}
+      {kept && dropped > 0 ? ` ${text.dropped(dropped)}` : null}
+    </p>
+  );
+}
