@@ -40,3 +40,5 @@ export const RENDER_SECONDS = 180;
 export const RENDER_MEMORY_BYTES = 1_200_000_000;
 /** Longer side of a thumbnail in pixels. */
 export const THUMBNAIL_PX = 480;
+/** Pixels of the largest dark speck that can be taken out of a scan: a full stop of a 600 dpi scan has more. */
+export const MAX_SPECK_PX = 60;
