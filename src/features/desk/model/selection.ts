@@ -1,4 +1,5 @@
 import type { FlowNetDocument } from '#shared/contract/document.ts';
+import { kindOnSheet } from './sheet-kinds.ts';
 
 /** What is chosen on the desk. `vertex`: index of the chosen vertex of a single chosen line. */
 export type Selection = {
@@ -35,4 +36,18 @@ function prunedVertex(
   const value = ids.length === 1 ? document.entities[ids[0]!]?.value : undefined;
   if (vertex === null || value?.kind !== 'line') return null;
   return vertex < value.points.length ? vertex : null;
+}
+
+/** The selection without things of some kinds, which are hidden or locked. */
+export function withoutKinds(
+  selection: Selection,
+  kinds: readonly string[],
+  document: FlowNetDocument,
+): Selection {
+  const ids = selection.ids.filter((id) => {
+    const value = document.entities[id]?.value;
+    return value !== undefined && !kinds.includes(kindOnSheet(value));
+  });
+  if (ids.length === selection.ids.length) return selection;
+  return ids.length === 0 ? NO_SELECTION : { kind: selection.kind, ids, vertex: null };
 }

@@ -1,10 +1,28 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
 
+/**
+ * To what a place near existing lines snaps, the first before the others: an end of a line; where two lines cross; one
+ * of the places a line was clicked through; where the segment drawn meets a line at a right angle; anywhere along a
+ * boundary or another line; straight on beyond the end of a line.
+ */
+export const SNAP_KINDS = [
+  'end',
+  'crossing',
+  'vertex',
+  'rightAngle',
+  'boundary',
+  'line',
+  'extension',
+] as const;
+export type SnapKind = (typeof SNAP_KINDS)[number];
+
 /** What a place near existing lines snaps to. */
 export type Snap = {
-  readonly kind: 'end' | 'vertex' | 'line';
+  readonly kind: SnapKind;
   readonly at: SheetPx;
   readonly lineId: string;
+  /** For `extension`: the end that is drawn on from. */
+  readonly from: SheetPx | null;
 };
 
 /** What the tool in hand shows under the pointer before anything is pressed. */

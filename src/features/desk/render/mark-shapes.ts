@@ -140,6 +140,56 @@ const snapLine: Painter = (context, mark) => {
   haloStroke(context, mark, 1.6);
 };
 
+const snapVertex: Painter = (context, mark) => {
+  circle(context, 7);
+  haloStroke(context, mark, 1.6);
+};
+
+const snapCrossing: Painter = (context, mark) => {
+  context.beginPath();
+  context.moveTo(-7, -7);
+  context.lineTo(7, 7);
+  context.moveTo(-7, 7);
+  context.lineTo(7, -7);
+  haloStroke(context, mark, 1.6);
+};
+
+/** The draughtsman's sign for a right angle. */
+const snapRightAngle: Painter = (context, mark) => {
+  context.beginPath();
+  context.moveTo(-8, -8);
+  context.lineTo(-8, 8);
+  context.lineTo(8, 8);
+  context.moveTo(-8, 1);
+  context.lineTo(-1, 1);
+  context.lineTo(-1, 8);
+  haloStroke(context, mark, 1.6);
+};
+
+/** A level stroke with hatching below, as ground is drawn. */
+const snapBoundary: Painter = (context, mark) => {
+  context.beginPath();
+  context.moveTo(-9, 0);
+  context.lineTo(9, 0);
+  for (const x of [-4, 2, 8]) {
+    context.moveTo(x, 0);
+    context.lineTo(x - 5, 7);
+  }
+  haloStroke(context, mark, 1.5);
+};
+
+/** Three strokes in a row: a line drawn on beyond its end. */
+const snapExtension: Painter = (context, mark) => {
+  context.beginPath();
+  for (const x of [-9, -2, 5]) {
+    context.moveTo(x, 0);
+    context.lineTo(x + 4, 0);
+  }
+  context.moveTo(0, -5);
+  context.lineTo(0, 5);
+  haloStroke(context, mark, 1.5);
+};
+
 const cross: Painter = (context, mark) => {
   plus(context, 8);
   haloStroke(context, mark, 1.4);
@@ -162,6 +212,11 @@ export const MARK_PAINTERS: Record<MarkShape, Painter> = {
   chosenHandle,
   snapEnd,
   snapLine,
+  snapVertex,
+  snapCrossing,
+  snapRightAngle,
+  snapBoundary,
+  snapExtension,
   cross,
   doubt,
 };

@@ -22,6 +22,11 @@ export type MarkShape =
   | 'chosenHandle'
   | 'snapEnd'
   | 'snapLine'
+  | 'snapVertex'
+  | 'snapCrossing'
+  | 'snapRightAngle'
+  | 'snapBoundary'
+  | 'snapExtension'
   | 'cross'
   | 'doubt';
 

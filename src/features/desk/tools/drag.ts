@@ -4,9 +4,10 @@ import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { nearestVertex, segmentAt } from '#shared/compute/geometry/hit-test.ts';
 import type { DocumentEntity } from '#shared/contract/document.ts';
 import { selectOne } from '../model/selection.ts';
+import type { Snap } from '../model/tool-overlay.ts';
 import { constrained } from './constrain.ts';
 import { keptPoint, withPointInserted, withPointMoved } from './line-points.ts';
-import { type Mark, markAt, reachOf } from './pick.ts';
+import { isFree, type Mark, markAt, reachOf } from './pick.ts';
 import { snapAt } from './snap.ts';
 import {
   AT_REST,
@@ -47,7 +48,7 @@ export function grabVertex(context: ToolContext, at: SheetPx, keys: Modifiers): 
   if (kind === 'profile') return grabProfileVertex(context, at);
   if (context.readOnly || kind !== 'line' || ids.length !== 1 || lineId === undefined) return null;
   const line = context.document.entities[lineId]?.value;
-  if (line?.kind !== 'line' || context.hiddenKinds.includes(line.line)) return null;
+  if (line?.kind !== 'line' || !isFree(context, line)) return null;
   const hit = nearestVertex([{ id: lineId, points: line.points }], at, reachOf(context));
   if (hit !== null && !keys.alt) {
     const select = { do: 'select', selection: selectOne('line', lineId, hit.index) } as const;
@@ -69,8 +70,8 @@ export function grabVertex(context: ToolContext, at: SheetPx, keys: Modifiers): 
 function grabProfileVertex({ selection, ...context }: ToolContext, at: SheetPx): ToolStep | null {
   const id = selection.ids[0];
   const value = id === undefined ? undefined : context.document.entities[id]?.value;
-  if (context.readOnly || id === undefined || context.hiddenKinds.includes('profile')) return null;
-  if (value?.kind !== 'profile' || value.place.on !== 'sheet') return null;
+  if (context.readOnly || id === undefined || value?.kind !== 'profile') return null;
+  if (value.place.on !== 'sheet' || !isFree({ selection, ...context }, value)) return null;
   const { points } = value.place;
   const hit = nearestVertex([{ id, points }], at, reachOf({ selection, ...context }));
   if (hit === null) return null;
@@ -151,8 +152,21 @@ function placeFor(state: Dragging, at: SheetPx, keys: Modifiers, context: ToolCo
     state.from[1] + at[1] - state.pressedAt[1],
   );
   if (state.target.kind === 'vertex') {
-    const snap = snapAt(context, moved, keys, state.target.lineId);
+    const snap = snapWhileDragging(state.target, moved, keys, context);
     if (snap !== null) return snap.at;
   }
   return keys.shift ? constrained(context, state.from, moved) : moved;
+}
+
+/** What a dragged vertex snaps to; the segment that it ends comes from the vertex beside it. */
+export function snapWhileDragging(
+  { lineId, index }: Extract<DragTarget, { kind: 'vertex' }>,
+  at: SheetPx,
+  keys: Modifiers,
+  context: ToolContext,
+): Snap | null {
+  const value = context.document.entities[lineId]?.value;
+  const points = value?.kind === 'line' ? value.points : [];
+  const beside = index === 0 ? points[1] : index === points.length - 1 ? points[index - 1] : undefined;
+  return snapAt(context, at, keys, lineId, beside ?? null);
 }

@@ -1,7 +1,8 @@
 import { type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
 import { nearestOnLines, type PickableLine } from '#shared/compute/geometry/hit-test.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
-import { type EntityOf, entitiesOf } from '#shared/contract/document.ts';
+import { type DocumentEntity, type EntityOf, entitiesOf } from '#shared/contract/document.ts';
+import { isSheetKind, kindOnSheet } from '../model/sheet-kinds.ts';
 import type { ToolContext } from './tool-types.ts';
 
 export type Mark = {
@@ -24,10 +25,29 @@ export function reachOf(context: ToolContext, extraPx = 0): number {
   return (context.reachPx + extraPx) / context.zoom;
 }
 
-/** Lines that are shown, for picking and snapping; `except` leaves one out. */
-export function shownLines(context: ToolContext, except: string | null = null): PickableLine[] {
+type Kinds = Pick<ToolContext, 'hiddenKinds' | 'lockedKinds'>;
+
+/** True where a thing's kind is hidden: it is neither picked nor snapped to. */
+export function isHidden({ hiddenKinds }: Kinds, value: DocumentEntity): boolean {
+  const kind = kindOnSheet(value);
+  return isSheetKind(kind) && hiddenKinds.includes(kind);
+}
+
+/** True where a thing's kind is locked: it is shown and snapped to, but neither picked nor changed. */
+export function isLocked({ lockedKinds }: Kinds, value: DocumentEntity): boolean {
+  const kind = kindOnSheet(value);
+  return isSheetKind(kind) && lockedKinds.includes(kind);
+}
+
+/** True where a thing can be picked and changed as far as its kind goes. */
+export function isFree(kinds: Kinds, value: DocumentEntity): boolean {
+  return !isHidden(kinds, value) && !isLocked(kinds, value);
+}
+
+/** Lines that can be picked. */
+export function freeLines(context: ToolContext): PickableLine[] {
   return entitiesOf(context.document, 'line')
-    .filter(({ id, value }) => id !== except && !context.hiddenKinds.includes(value.line))
+    .filter(({ value }) => isFree(context, value))
     .map(({ id, value }) => ({ id, points: value.points }));
 }
 
@@ -38,19 +58,15 @@ export function placeOf(value: EntityOf<'readingPoint'>, map: SectionMap | null)
   return map?.toSheet(sectionPt(place.offset, place.elevation)) ?? null;
 }
 
-/** Known points and reading points that are shown. */
-export function shownMarks(context: ToolContext): Mark[] {
+/** Known points and reading points that can be picked. */
+export function freeMarks(context: ToolContext): Mark[] {
   const marks: Mark[] = [];
-  if (!context.hiddenKinds.includes('readingPoint')) {
-    for (const { id, value } of entitiesOf(context.document, 'readingPoint')) {
-      const at = placeOf(value, context.map);
-      if (at !== null) marks.push({ kind: 'readingPoint', id, at });
-    }
+  for (const { id, value } of entitiesOf(context.document, 'readingPoint')) {
+    const at = isFree(context, value) ? placeOf(value, context.map) : null;
+    if (at !== null) marks.push({ kind: 'readingPoint', id, at });
   }
-  if (!context.hiddenKinds.includes('knownPoint')) {
-    for (const { id, value } of entitiesOf(context.document, 'knownPoint')) {
-      marks.push({ kind: 'knownPoint', id, at: sheetPx(...value.at) });
-    }
+  for (const { id, value } of entitiesOf(context.document, 'knownPoint')) {
+    if (isFree(context, value)) marks.push({ kind: 'knownPoint', id, at: sheetPx(...value.at) });
   }
   return marks;
 }
@@ -58,7 +74,7 @@ export function shownMarks(context: ToolContext): Mark[] {
 /** The mark under the pointer, of the kinds given; null when there is none. */
 export function markAt(context: ToolContext, at: SheetPx, kinds: readonly Mark['kind'][]): Mark | null {
   return nearest(
-    shownMarks(context).filter((mark) => kinds.includes(mark.kind)),
+    freeMarks(context).filter((mark) => kinds.includes(mark.kind)),
     at,
     reachOf(context, MARK_EXTRA_PX),
   );
@@ -71,19 +87,20 @@ export function pickAt(context: ToolContext, at: SheetPx): Picked | null {
   if (balloon !== null) return { kind: 'note', id: balloon.id, at: balloon.at };
   const mark = markAt(context, at, ['readingPoint', 'knownPoint']);
   if (mark !== null) return mark;
-  const hit = nearestOnLines(shownLines(context), at, reachOf(context));
+  const hit = nearestOnLines(freeLines(context), at, reachOf(context));
   if (hit !== null)
     return { kind: 'line', id: hit.id, at: sheetPx(hit.at[0], hit.at[1]), segment: hit.segment };
-  const profile = nearestOnLines(shownProfiles(context), at, reachOf(context));
+  const profile = nearestOnLines(freeProfiles(context), at, reachOf(context));
   return profile === null
     ? null
     : { kind: 'profile', id: profile.id, at: sheetPx(profile.at[0], profile.at[1]) };
 }
 
 /** Profiles as lines on the sheet; a grid is none. */
-function shownProfiles(context: ToolContext): PickableLine[] {
-  if (context.hiddenKinds.includes('profile')) return [];
-  return entitiesOf(context.document, 'profile').flatMap(({ id, value: { place } }): PickableLine[] => {
+function freeProfiles(context: ToolContext): PickableLine[] {
+  return entitiesOf(context.document, 'profile').flatMap(({ id, value }): PickableLine[] => {
+    const { place } = value;
+    if (!isFree(context, value)) return [];
     if (place.on === 'sheet') return [{ id, points: place.points }];
     const { map } = context;
     if (place.on === 'grid' || map === null) return [];

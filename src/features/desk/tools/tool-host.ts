@@ -1,4 +1,5 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
+import { IDENTITY } from '#shared/compute/linear-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
@@ -35,7 +36,8 @@ export function createToolHost(store: DeskStore): ToolHost {
   const mapOf = rememberedMap();
 
   function contextFor(view: HostView): ToolContext {
-    const { document, selection, draft, tool, boundaryKind, hiddenKinds, readOnly } = store.getState();
+    const { document, selection, draft, tool, boundaryKind, hiddenKinds, lockedKinds, ...state } =
+      store.getState();
     return {
       document,
       selection,
@@ -43,7 +45,10 @@ export function createToolHost(store: DeskStore): ToolHost {
       tool,
       choice: lineChoiceOf(tool, boundaryKind),
       hiddenKinds,
-      readOnly,
+      lockedKinds,
+      snapKinds: state.aids.snapKinds,
+      working: state.reading?.frame?.matrix ?? IDENTITY,
+      readOnly: state.readOnly,
       map: mapOf(document),
       newId: store.newId,
       ...view,

@@ -2,6 +2,7 @@ import type { SheetPx } from '#shared/compute/frames.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
 import type { ToolId } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
+import { snapWhileDragging } from './drag.ts';
 import { growingEnd } from './line-points.ts';
 import { knownPointStep, noteStep, readingPointStep } from './place-tool.ts';
 import { nextProfilePlace, profileStep } from './profile-tool.ts';
@@ -40,8 +41,9 @@ export function overlayOf(
   const magnify = context.tool === 'knownPoint' || state.at === 'dragging';
   if (at === null || context.readOnly) return { ...NO_OVERLAY, magnify: magnify && at !== null };
   if (state.at === 'dragging') {
-    const lineId = state.target.kind === 'vertex' ? state.target.lineId : null;
-    return { rubber: null, snap: lineId === null ? null : snapAt(context, at, keys, lineId), magnify };
+    const { target } = state;
+    const snap = target.kind === 'vertex' ? snapWhileDragging(target, at, keys, context) : null;
+    return { rubber: null, snap, magnify };
   }
   if (context.tool === 'profile') {
     const { from, to } = nextProfilePlace(at, keys, context);

@@ -1,4 +1,5 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
+import type { LinearMap } from '#shared/compute/linear-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
 import type { Draft, HideableKind } from '../model/desk-state.ts';
@@ -6,6 +7,7 @@ import type { LocalOp } from '../model/document-ops.ts';
 import type { DeskIntent } from '../model/intents.ts';
 import type { Selection } from '../model/selection.ts';
 import type { BoundaryKind, LineChoice, ToolId } from '../model/tool-choice.ts';
+import type { SnapKind } from '../model/tool-overlay.ts';
 
 export type Modifiers = { readonly shift: boolean; readonly alt: boolean; readonly ctrl: boolean };
 
@@ -49,6 +51,10 @@ export type ToolContext = {
   /** The line the tool draws; null for a tool that draws none. */
   readonly choice: LineChoice | null;
   readonly hiddenKinds: readonly HideableKind[];
+  readonly lockedKinds: readonly HideableKind[];
+  readonly snapKinds: readonly SnapKind[];
+  /** Sheet pixels to the section in which right angles are judged. */
+  readonly working: LinearMap;
   readonly balloons: readonly Balloon[];
   readonly readOnly: boolean;
   /** Screen pixels per sheet pixel. */

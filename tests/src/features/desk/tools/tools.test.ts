@@ -172,7 +172,7 @@ describe('tracing', () => {
       { line: 'impervious' },
     );
     const hand = desk({ [LINE_A]: base }, 'equipotential');
-    expect(hand.overlay(250, 305).snap).toMatchObject({ kind: 'line', at: [250, 300] });
+    expect(hand.overlay(250, 305).snap).toMatchObject({ kind: 'boundary', at: [250, 300] });
     expect(hand.overlay(497, 304).snap).toMatchObject({ kind: 'end', at: [500, 300] });
     hand.click(250, 305);
     hand.click(250, 106);
