@@ -14,12 +14,15 @@ const LEAST_CONTRAST = 12;
 /** The part of the darkest pixels that count as full stroke. */
 const FULL_PART = 0.005;
 
+/** So much farther from the middle tone on the light side, and the strokes are light on dark. */
+const INVERTED = 1.5;
+
 /**
- * How much of each pixel is ink, whatever the paper's tone: the shortfall against the mean of its surroundings, after a
+ * How much of each pixel is ink, whatever the paper's tone, dark strokes on light as light ones on dark: the shortfall against the mean of its surroundings, after a
  * light smoothing against speckle, scaled so that the darkest strokes are full. All paper where nothing stands out.
  */
 export function inkMapOf({ width, height, grey }: InkWindow): InkMap {
-  const smooth = smoothed(grey, width, height);
+  const smooth = smoothed(darkOnLight(grey), width, height);
   const sums = integralOf(smooth, width, height);
   const shortfall = new Uint8Array(width * height);
   const tally = new Uint32Array(256);
@@ -38,6 +41,25 @@ export function inkMapOf({ width, height, grey }: InkWindow): InkMap {
     }
   }
   return { width, height, ink: scaled(shortfall, fullStroke(tally, width * height)) };
+}
+
+/** The window with its strokes dark: a blueprint or an inverted scan, most of it dark, is turned over. */
+function darkOnLight(grey: Uint8Array): Uint8Array {
+  const tally = new Uint32Array(256);
+  for (const value of grey) tally[value]! += 1;
+  const [low, middle, high] = [FULL_PART, 0.5, 1 - FULL_PART].map((part) =>
+    toneAt(tally, part * grey.length),
+  );
+  return high! - middle! > INVERTED * (middle! - low!) ? grey.map((value) => 255 - value) : grey;
+}
+
+function toneAt(tally: Uint32Array, count: number): number {
+  let seen = 0;
+  for (let value = 0; value < 256; value += 1) {
+    seen += tally[value]!;
+    if (seen > count) return value;
+  }
+  return 255;
 }
 
 /** The shortfall that the darkest pixels reach. */

@@ -3,6 +3,7 @@ import { INK_LOOKS, inkScan } from '#server/bench/ink-scan.ts';
 import { distanceToSegment } from '#shared/compute/geometry/thin.ts';
 import { followInk } from '#shared/compute/ink/follow-ink.ts';
 import { inkMapOf } from '#shared/compute/ink/ink-window.ts';
+import { seededNoise } from '#tests/support/exact-nets/seeded-noise.ts';
 
 type Place = readonly [number, number];
 
@@ -27,7 +28,7 @@ describe('a followed line', () => {
     const all: number[] = [];
     for (const seed of [1, 2, 3]) {
       const { window, from, to, middle } = inkScan({ ...INK_LOOKS[name]!, seed });
-      const line = followInk(window, from, to);
+      const { line } = followInk(window, from, to);
       all.push(...distances(line, middle));
       expect(line.length).toBeLessThan(120);
     }
@@ -37,21 +38,44 @@ describe('a followed line', () => {
 
   it('takes hold of the stroke when a click misses it a little', () => {
     const { window, from, to, middle } = inkScan({ ...INK_LOOKS.toned!, seed: 4 });
-    const line = followInk(window, [from[0], from[1] + 3], [to[0], to[1] - 3]);
+    const { line } = followInk(window, [from[0], from[1] + 3], [to[0], to[1] - 3]);
     expect(Math.hypot(line[0]![0] - from[0], line[0]![1] - from[1])).toBeLessThan(2.5);
     expect(distances(line, middle)[0]).toBeLessThan(1.5);
   });
 
+  it('runs on ink for most of its length, and over paper with a texture for little of it', () => {
+    const { window, from, to } = inkScan({ ...INK_LOOKS.faded!, seed: 5 });
+    expect(followInk(window, from, to).onInk).toBeGreaterThan(0.75);
+    const noise = seededNoise(3);
+    const paper = { width: 400, height: 300, grey: new Uint8Array(120_000).map(() => 200 + 15 * noise()) };
+    expect(followInk(paper, [40, 150], [360, 160]).onInk).toBeLessThan(0.45);
+  });
+
+  it('is the same on a scan turned over into white on black', () => {
+    const { window, from, to, middle } = inkScan({ ...INK_LOOKS.toned!, seed: 6 });
+    const inverted = { ...window, grey: window.grey.map((value) => 255 - value) };
+    const { line, onInk } = followInk(inverted, from, to);
+    expect(onInk).toBeGreaterThan(0.75);
+    expect(line).toEqual(followInk(window, from, to).line);
+    expect(distances(line, middle).at(-1)).toBeLessThan(4);
+  });
+
+  it('takes hold from farther away when the view is small', () => {
+    const { window, from, to } = inkScan({ ...INK_LOOKS.clean!, seed: 4 });
+    const { line } = followInk(window, [from[0], from[1] + 12], [to[0], to[1] - 12], 16);
+    expect(Math.hypot(line[0]![0] - from[0], line[0]![1] - from[1])).toBeLessThan(6);
+  });
+
   it('is straight over empty paper', () => {
     const empty = { width: 200, height: 100, grey: new Uint8Array(20_000).fill(240) };
-    const line = followInk(empty, [10, 50], [180, 50]);
+    const { line } = followInk(empty, [10, 50], [180, 50]);
     expect(line).toHaveLength(2);
     expect(line[0]![1]).toBeCloseTo(50.5, 6);
   });
 
   it('joins two clicks on one pixel without a search', () => {
     const empty = { width: 20, height: 20, grey: new Uint8Array(400).fill(240) };
-    expect(followInk(empty, [5.2, 5.3], [5.6, 5.4])).toEqual([
+    expect(followInk(empty, [5.2, 5.3], [5.6, 5.4]).line).toEqual([
       [5.2, 5.3],
       [5.6, 5.4],
     ]);
@@ -59,7 +83,7 @@ describe('a followed line', () => {
 
   it('stays inside the window when a click lies outside', () => {
     const empty = { width: 60, height: 60, grey: new Uint8Array(3600).fill(240) };
-    for (const [x, y] of followInk(empty, [-20, 30], [200, 30])) {
+    for (const [x, y] of followInk(empty, [-20, 30], [200, 30]).line) {
       expect(x).toBeGreaterThanOrEqual(0);
       expect(x).toBeLessThanOrEqual(60);
       expect(y).toBeGreaterThanOrEqual(0);
