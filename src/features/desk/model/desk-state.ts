@@ -6,6 +6,7 @@ import type { LocalOp } from './document-ops.ts';
 import type { GuideOwner, Guides, GuidesByOwner } from './guides.ts';
 import type { History } from './history.ts';
 import type { DeskIntent } from './intents.ts';
+import type { EditEvent, PendingEdit } from './pending-edit.ts';
 import type { ReadingPort } from './reading-port.ts';
 import type { Selection } from './selection.ts';
 import type { Conflict } from './shared-edits.ts';
@@ -63,6 +64,8 @@ export type DeskState = {
   /** All steps that can be taken back or done again. */
   readonly steps: History;
   readonly draft: Draft | null;
+  /** What the next click on the sheet answers; null while nothing is asked for. */
+  readonly pendingEdit: PendingEdit | null;
   /** Entities as they look while something is being dragged and is not let go yet. */
   readonly preview: Readonly<Record<string, DocumentEntity>>;
   readonly conflicts: Readonly<Record<string, Conflict>>;
@@ -82,6 +85,7 @@ export type DeskActions = {
   select(selection: SelectionInput): void;
   setPointer(at: SheetPoint | null): void;
   setDraft(draft: Draft | null): void;
+  setPendingEdit(edit: PendingEdit | null): void;
   setPreview(preview: Readonly<Record<string, DocumentEntity>>): void;
   setHidden(kinds: readonly HideableKind[]): void;
   setLocked(kinds: readonly HideableKind[]): void;
@@ -104,6 +108,9 @@ export type DeskActions = {
   /** Asks the canvas to bring a place of the sheet into view. */
   lookAt(at: SheetPoint): void;
   onLookAt(listener: (at: SheetPoint) => void): () => void;
+  /** Asks the tools on the sheet to do something with what is chosen. */
+  requestEdit(event: EditEvent): void;
+  onEditRequest(listener: (event: EditEvent) => void): () => void;
   newId(): string;
   close(): void;
 };

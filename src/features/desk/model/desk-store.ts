@@ -17,8 +17,9 @@ import { withGuides } from './guides.ts';
 import { EMPTY_HISTORY, historyLabels } from './history.ts';
 import type { DeskIntent } from './intents.ts';
 import { createListeners } from './listeners.ts';
+import { type EditEvent, keptEdit } from './pending-edit.ts';
 import { reopenedLine } from './reopened-line.ts';
-import { NO_SELECTION, prunedSelection, type Selection, withoutKinds } from './selection.ts';
+import { NO_SELECTION, prunedSelection, withoutKinds } from './selection.ts';
 import { FIRST_AIDS } from './view-aids.ts';
 
 type Opened = { document: FlowNetDocument; changeNumber?: number };
@@ -43,6 +44,7 @@ function firstState(opened: Opened, options: DeskStoreOptions): DeskState {
     history: historyLabels(options.history ?? EMPTY_HISTORY),
     steps: options.history ?? EMPTY_HISTORY,
     draft: null,
+    pendingEdit: null,
     preview: {},
     conflicts: {},
     pending: {},
@@ -56,6 +58,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
   const commands = createListeners<DeskCommand>();
   const intents = createListeners<DeskIntent>();
   const looks = createListeners<SheetPoint>();
+  const editRequests = createListeners<EditEvent>();
   const edits = createDeskEdits(opened.document, commands.tell, options.history);
   const store = createStore<DeskState>(() => firstState(opened, options));
 
@@ -78,6 +81,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     const before = store.getState();
     const changed = valuesDiffer(document, before.document);
     const documentRevision = before.documentRevision + (changed ? 1 : 0);
+    const selection = prunedSelection(before.selection, document);
     store.setState({
       ...extra,
       document,
@@ -86,7 +90,8 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
       conflicts,
       history: historyLabels(edits.history()),
       steps: edits.history(),
-      selection: prunedSelection(before.selection, document),
+      selection,
+      pendingEdit: keptEdit(before.pendingEdit, selection),
       draft: keptDraft(before.draft, document),
     });
     if (changed) options.reader?.ask(document, documentRevision);
@@ -112,9 +117,10 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
   }
 
   /** The selection without things of kinds that can no longer be picked. */
-  function selectionOutside(kinds: readonly HideableKind[]): Selection {
-    const { selection, document } = store.getState();
-    return withoutKinds(selection, kinds, document);
+  function selectionOutside(kinds: readonly HideableKind[]): Pick<DeskState, 'selection' | 'pendingEdit'> {
+    const { selection, document, pendingEdit } = store.getState();
+    const left = withoutKinds(selection, kinds, document);
+    return { selection: left, pendingEdit: keptEdit(pendingEdit, left) };
   }
 
   const actions: DeskActions = {
@@ -124,21 +130,31 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     setTool(tool, boundary) {
       const { boundaryKind, readOnly } = store.getState();
       if (readOnly && tool !== 'select' && tool !== 'note') return;
-      store.setState({ tool, boundaryKind: boundary ?? boundaryKind, draft: null, preview: {} });
+      store.setState({
+        tool,
+        boundaryKind: boundary ?? boundaryKind,
+        draft: null,
+        pendingEdit: null,
+        preview: {},
+      });
     },
-    select(selection) {
-      const { document } = store.getState();
-      store.setState({ selection: prunedSelection({ vertex: null, ...selection }, document) });
+    select(input) {
+      const { document, pendingEdit } = store.getState();
+      const selection = prunedSelection({ vertex: null, ...input }, document);
+      store.setState({ selection, pendingEdit: keptEdit(pendingEdit, selection) });
     },
     setPointer: (pointerAt) => store.setState({ pointerAt }),
     setDraft: (draft) => store.setState({ draft: keptDraft(draft, store.getState().document) }),
+    setPendingEdit: (pendingEdit) =>
+      store.setState({ pendingEdit: keptEdit(pendingEdit, store.getState().selection) }),
     setPreview: (preview) => store.setState({ preview }),
     setGuides: (owner, guides) =>
       store.setState({ guides: withGuides(store.getState().guides, owner, guides) }),
-    setHidden: (hiddenKinds) => store.setState({ hiddenKinds, selection: selectionOutside(hiddenKinds) }),
-    setLocked: (lockedKinds) => store.setState({ lockedKinds, selection: selectionOutside(lockedKinds) }),
+    setHidden: (hiddenKinds) => store.setState({ hiddenKinds, ...selectionOutside(hiddenKinds) }),
+    setLocked: (lockedKinds) => store.setState({ lockedKinds, ...selectionOutside(lockedKinds) }),
     setAids: (aids) => store.setState({ aids: { ...store.getState().aids, ...aids } }),
-    setReadOnly: (readOnly) => store.setState({ readOnly, draft: null, preview: {}, tool: 'select' }),
+    setReadOnly: (readOnly) =>
+      store.setState({ readOnly, draft: null, pendingEdit: null, preview: {}, tool: 'select' }),
     setNotice: (notice) => store.setState({ notice }),
     receive(changes) {
       edits.receive(changes, options.clientId ?? null);
@@ -163,6 +179,8 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     onIntent: intents.add,
     lookAt: looks.tell,
     onLookAt: looks.add,
+    requestEdit: editRequests.tell,
+    onEditRequest: editRequests.add,
     newId: options.newId ?? newUuid,
     close() {
       endAnswers?.();
@@ -171,6 +189,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
       commands.clear();
       intents.clear();
       looks.clear();
+      editRequests.clear();
     },
   };
   return { ...store, ...actions };

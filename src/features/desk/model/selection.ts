@@ -1,9 +1,12 @@
-import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
 import { kindOnSheet } from './sheet-kinds.ts';
 
-/** What is chosen on the desk. `vertex`: index of the chosen vertex of a single chosen line. */
+/**
+ * What is chosen on the desk. `several`: two or more things, of one kind or of several; of every other kind there is
+ * one. `vertex`: index of the chosen vertex of a single chosen line.
+ */
 export type Selection = {
-  readonly kind: 'line' | 'readingPoint' | 'knownPoint' | 'soil' | 'profile' | 'none';
+  readonly kind: 'line' | 'readingPoint' | 'knownPoint' | 'soil' | 'profile' | 'several' | 'none';
   readonly ids: readonly string[];
   readonly vertex: number | null;
 };
@@ -11,16 +14,36 @@ export type Selection = {
 export const NO_SELECTION: Selection = { kind: 'none', ids: [], vertex: null };
 
 export function selectOne(
-  kind: Exclude<Selection['kind'], 'none'>,
+  kind: Exclude<Selection['kind'], 'none' | 'several'>,
   id: string,
   vertex: number | null = null,
 ): Selection {
   return { kind, ids: [id], vertex };
 }
 
+/** Kinds of which several can be chosen at once: a known point belongs to all nets of its section, a soil to a region. */
+const TOGETHER: readonly string[] = ['line', 'readingPoint', 'profile'] satisfies Selection['kind'][];
+
+/** True for a thing of which several can be chosen at once. */
+export function canBeTogether(value: DocumentEntity | undefined): boolean {
+  return value !== undefined && TOGETHER.includes(value.kind);
+}
+
+/** All of the things given that can be chosen together and are in the document, each once. */
+export function selectSeveral(ids: readonly string[], document: FlowNetDocument): Selection {
+  const [first, ...more] = new Set(ids.filter((id) => canBeTogether(document.entities[id]?.value)));
+  if (first === undefined) return NO_SELECTION;
+  if (more.length > 0) return { kind: 'several', ids: [first, ...more], vertex: null };
+  return { kind: document.entities[first]?.value.kind as Selection['kind'], ids: [first], vertex: null };
+}
+
 /** The selection without what the document no longer holds. */
 export function prunedSelection(selection: Selection, document: FlowNetDocument): Selection {
   if (selection.kind === 'none') return selection;
+  if (selection.kind === 'several' || selection.ids.length > 1) {
+    const held = selectSeveral(selection.ids, document);
+    return held.kind === 'several' && held.ids.length === selection.ids.length ? selection : held;
+  }
   const ids = selection.ids.filter((id) => document.entities[id]?.value.kind === selection.kind);
   if (ids.length === 0) return NO_SELECTION;
   const vertex = prunedVertex(selection.vertex, ids, document);
@@ -49,5 +72,7 @@ export function withoutKinds(
     return value !== undefined && !kinds.includes(kindOnSheet(value));
   });
   if (ids.length === selection.ids.length) return selection;
-  return ids.length === 0 ? NO_SELECTION : { kind: selection.kind, ids, vertex: null };
+  return ids.length === 0
+    ? NO_SELECTION
+    : prunedSelection({ kind: selection.kind, ids, vertex: null }, document);
 }
