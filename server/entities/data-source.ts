@@ -10,6 +10,7 @@ import { SnakeNamingStrategy } from './naming-strategy.ts';
 import { CommandBatchEntity, DocumentEntityRow, NetEntity, SectionEntity } from './net-entity.ts';
 import { NoteEntity, NoteEntryEntity } from './note-entity.ts';
 import { PersonEntity, PersonTokenEntity, SessionEntity, SignInFailureEntity } from './person-entity.ts';
+import { NetPresenceEntity } from './presence-entity.ts';
 
 export const entities = [
   PersonEntity,
@@ -33,6 +34,7 @@ export const entities = [
   ArtifactEntity,
   CalculationSheetEntity,
   OutboxMailEntity,
+  NetPresenceEntity,
 ];
 
 export interface DataSourceOptions {

@@ -11,6 +11,7 @@ import { RevisionChangeNumber1796126400010 } from './1796126400010-revision-chan
 import { SignInFailures1796126400011 } from './1796126400011-sign-in-failures.ts';
 import { DocumentVersion21796126400013 } from './1796126400013-document-version-2.ts';
 import { CalculationSheets1796126400060 } from './1796126400060-calculation-sheets.ts';
+import { NetPresence1796126400120 } from './1796126400120-net-presence.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -27,4 +28,5 @@ export const migrations = [
   SignInFailures1796126400011,
   DocumentVersion21796126400013,
   CalculationSheets1796126400060,
+  NetPresence1796126400120,
 ];

@@ -10,6 +10,7 @@ import { netFileRoutes } from './net-file-routes.ts';
 import { netRoutes } from './net-routes.ts';
 import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
+import { presenceRoutes } from './presence-routes.ts';
 import { revisionRoutes } from './revision-routes.ts';
 import { scheduleRoutes } from './schedule-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
@@ -30,6 +31,7 @@ export const routes: readonly RouteRecord[] = [
   ...netRoutes,
   ...netFileRoutes,
   ...commandRoutes,
+  ...presenceRoutes,
   ...scheduleRoutes,
   ...noteRoutes,
   ...revisionRoutes,

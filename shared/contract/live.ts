@@ -8,6 +8,8 @@ import { id } from './common.ts';
 export const liveEvent = z.discriminatedUnion('type', [
   z.object({ type: z.literal('net'), damId: id, netId: id, number: z.number(), clientId: z.nullable(id) }),
   z.object({ type: z.literal('notes'), damId: id, netId: id }),
+  // Somebody came to the net, left it, or took up something else there.
+  z.object({ type: z.literal('presence'), damId: id, netId: id }),
   z.object({ type: z.literal('revisions'), damId: id, netId: id }),
   z.object({ type: z.literal('drawing'), damId: id, drawingId: id }),
   z.object({ type: z.literal('dam'), damId: id }),

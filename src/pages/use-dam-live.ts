@@ -11,7 +11,8 @@ import { useLive } from '#client/lib/use-live.ts';
 export function useDamLive(damId: string): void {
   const queryClient = useQueryClient();
   useLive((message) => {
-    if (message.type === 'net' || ('damId' in message && message.damId !== damId)) return;
+    if (message.type === 'net' || message.type === 'presence') return;
+    if ('damId' in message && message.damId !== damId) return;
     for (const queryKey of [drawingKeys.root, damKeys.root, activityKeys.root])
       void queryClient.invalidateQueries({ queryKey });
   });

@@ -133,7 +133,7 @@ async function furnish(netId: string, sheetId: string): Promise<Record<string, s
   const calculationSheetId = uuidv7();
   const asked = { id: calculationSheetId, revisionId, paper: 'A4', jobNumber: '' };
   await callers.colleague.post(`/nets/${netId}/calculation-sheets`, asked).expect(202);
-  return { noteId, revisionId, mailId, calculationSheetId, drawingId: drawing.id };
+  return { noteId, revisionId, mailId, calculationSheetId, drawingId: drawing.id, clientId: uuidv7() };
 }
 
 interface Answer {

@@ -9,7 +9,7 @@ export function useCheckLive({ payload }: RevisionDto): void {
   const queryClient = useQueryClient();
   useLive((message) => {
     const own = message.type === 'hello' || ('netId' in message && message.netId === payload.netId);
-    if (!own) return;
+    if (!own || message.type === 'presence') return;
     if (message.type !== 'revisions') {
       void queryClient.invalidateQueries({ queryKey: noteKeys.ofNet(payload.netId) });
     }
