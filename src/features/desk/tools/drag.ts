@@ -71,7 +71,7 @@ function grabProfileVertex({ selection, ...context }: ToolContext, at: SheetPx):
   const id = selection.ids[0];
   const value = id === undefined ? undefined : context.document.entities[id]?.value;
   if (context.readOnly || id === undefined || value?.kind !== 'profile') return null;
-  if (value.place.on !== 'sheet' || !isFree({ selection, ...context }, value)) return null;
+  if (value.place.on !== 'sheet' || !isFree(context, value)) return null;
   const { points } = value.place;
   const hit = nearestVertex([{ id, points }], at, reachOf({ selection, ...context }));
   if (hit === null) return null;
