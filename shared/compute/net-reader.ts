@@ -1,7 +1,8 @@
 import { FieldMemory } from '#shared/compute/field/field-memory.ts';
+import { type HeadAtPlace, headAtPlace } from '#shared/compute/net/head-at-place.ts';
 import { type KeptNet, readAndKeep } from '#shared/compute/read-net.ts';
 import { type PointsRead, rereadPoints, type SmallChange } from '#shared/compute/reread-points.ts';
-import type { FlowNetDocument, VersionedEntity } from '#shared/contract/document.ts';
+import type { FlowNetDocument, SheetPoint, VersionedEntity } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
 /** Reads one net again and again while it is worked on. */
@@ -14,6 +15,8 @@ export type NetReader = {
    * was changed in place.
    */
   readPoints(document: FlowNetDocument): PointsRead | null;
+  /** The head at a place of the sheet by the net of the last whole reading; null where that gives none. */
+  headAt(place: SheetPoint): HeadAtPlace | null;
 };
 
 /**
@@ -39,6 +42,7 @@ export function createNetReader(): NetReader {
       const change = smallChange(last, now);
       return change && rereadPoints(now, change, kept, memory);
     },
+    headAt: (place) => (kept === null ? null : headAtPlace(place, kept.prepared)),
   };
 }
 

@@ -7,7 +7,7 @@ import type { GuideOwner, Guides, GuidesByOwner } from './guides.ts';
 import type { History } from './history.ts';
 import type { DeskIntent } from './intents.ts';
 import type { EditEvent, PendingEdit } from './pending-edit.ts';
-import type { ReadingPort } from './reading-port.ts';
+import type { HeadRead, ReadingPort } from './reading-port.ts';
 import type { Selection } from './selection.ts';
 import type { Conflict } from './shared-edits.ts';
 import type { BoundaryKind, ToolId } from './tool-choice.ts';
@@ -102,6 +102,8 @@ export type DeskActions = {
   replay(ops: readonly CommandOp[]): number;
   resolveConflict(entityId: string, keep: 'mine' | 'theirs'): void;
   baseVersionOf(entityId: string): number;
+  /** The head at a place by the net read last; null where it gives none, or the question was overtaken. */
+  headAt(place: SheetPoint): Promise<HeadRead | null>;
   onCommand(listener: (command: DeskCommand) => void): () => void;
   emitIntent(intent: DeskIntent): void;
   onIntent(listener: (intent: DeskIntent) => void): () => void;

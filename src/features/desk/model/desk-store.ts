@@ -174,6 +174,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
       publish();
     },
     baseVersionOf: edits.baseVersionOf,
+    headAt: async (place) => options.reader?.headAt(place) ?? null,
     onCommand: commands.add,
     emitIntent: intents.tell,
     onIntent: intents.add,

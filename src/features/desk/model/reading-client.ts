@@ -1,12 +1,13 @@
 import type { PointsRead } from '#shared/compute/reread-points.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
+import { createHeadQuestions } from './head-questions.ts';
 import type { ReadingPort } from './reading-port.ts';
-import type { PointsAhead, ReadingAnswer, ReadingQuestion } from './reading-worker.ts';
+import type { ReadingQuestion, WorkerAnswer, WorkerQuestion } from './reading-worker.ts';
 
 /** The part of a Worker that is used, so that the client's order of questions can be tested without a browser. */
 export type WorkerLike = {
-  postMessage(question: ReadingQuestion): void;
-  onmessage: ((event: MessageEvent<ReadingAnswer | PointsAhead>) => void) | null;
+  postMessage(question: WorkerQuestion): void;
+  onmessage: ((event: MessageEvent<WorkerAnswer>) => void) | null;
   onerror: ((event: ErrorEvent) => void) | null;
   terminate(): void;
 };
@@ -25,6 +26,7 @@ export function createReadingClient(start: () => WorkerLike = startWorker): Read
   let worker: WorkerLike | null = null;
   let underWay: ReadingQuestion | null = null;
   let next: ReadingQuestion | null = null;
+  const heads = createHeadQuestions((place) => worker?.postMessage({ place }));
 
   function answer(revision: number, reading: NetReading | null): void {
     for (const listener of listeners) listener(revision, reading);
@@ -42,12 +44,14 @@ export function createReadingClient(start: () => WorkerLike = startWorker): Read
   function prepared(): WorkerLike {
     const fresh = start();
     fresh.onmessage = ({ data }) => {
-      if ('reading' in data) answer(data.revision, data.reading);
+      if ('head' in data) heads.answer(data);
+      else if ('reading' in data) answer(data.revision, data.reading);
       else for (const listener of aheadListeners) listener(data.revision, data.points);
     };
     fresh.onerror = () => {
       fresh.terminate();
       worker = null;
+      heads.drop();
       answer(underWay?.revision ?? 0, null);
     };
     return fresh;
@@ -67,7 +71,10 @@ export function createReadingClient(start: () => WorkerLike = startWorker): Read
       aheadListeners.add(listener);
       return () => aheadListeners.delete(listener);
     },
+    // Without a worker nothing has been read, and there is no net to ask.
+    headAt: (place) => (worker === null ? Promise.resolve(null) : heads.ask(place)),
     close() {
+      heads.drop();
       listeners.clear();
       aheadListeners.clear();
       next = null;

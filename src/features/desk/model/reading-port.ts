@@ -1,5 +1,6 @@
+import type { HeadAtPlace } from '#shared/compute/net/head-at-place.ts';
 import type { PointsRead } from '#shared/compute/reread-points.ts';
-import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
 /** Works out the reading of a document off the main thread. */
@@ -13,5 +14,12 @@ export type ReadingPort = {
   onAnswer(listener: (revision: number, reading: NetReading | null) => void): () => void;
   /** Is told the points where they are read ahead of the answer that follows. Gives a function that ends it. */
   onPoints(listener: (revision: number, points: PointsRead) => void): () => void;
+  /**
+   * Asks for the head at a place of the sheet by the net read last, `of` that revision; null where it gives none. Only
+   * the newest question is sure to be answered: an older one that still waits is answered with null at once.
+   */
+  headAt(place: SheetPoint): Promise<HeadRead | null>;
   close(): void;
 };
+
+export type HeadRead = { readonly of: number; readonly head: HeadAtPlace | null };

@@ -239,6 +239,7 @@ describe('reading', () => {
       ask: (_document, revision) => asked.push(revision),
       onAnswer: () => () => undefined,
       onPoints: () => () => undefined,
+      headAt: async () => null,
       close: () => undefined,
     };
     const { store } = deskWith({ [LINE_A]: shortLine }, { reader });
@@ -260,6 +261,7 @@ describe('reading', () => {
         told.points = listener;
         return () => undefined;
       },
+      headAt: async () => null,
       close: () => undefined,
     };
     const { store } = deskWith({ [LINE_A]: shortLine }, { reader });

@@ -1,18 +1,25 @@
 import { describe, expect, it } from 'vitest';
 import { createReadingClient, type WorkerLike } from '#client/features/desk/model/reading-client.ts';
-import type { PointsAhead, ReadingAnswer } from '#client/features/desk/model/reading-worker.ts';
+import type { HeadAnswer, PointsAhead, ReadingAnswer } from '#client/features/desk/model/reading-worker.ts';
 import { readNet } from '#shared/compute/read-net.ts';
+import type { SheetPoint } from '#shared/contract/document.ts';
 import { documentWith } from '#tests/support/desk/desk-fixture.ts';
 
 /** A worker that reads when the test lets it, with the real reading inside. */
 function heldWorker() {
   const questions: number[] = [];
+  const places: SheetPoint[] = [];
   let answers: Array<() => void> = [];
   const worker: WorkerLike = {
     onmessage: null,
     onerror: null,
     terminate: () => undefined,
-    postMessage({ revision, document }) {
+    postMessage(question) {
+      if ('place' in question) {
+        places.push(question.place);
+        return;
+      }
+      const { revision, document } = question;
       questions.push(revision);
       const data: ReadingAnswer = { revision, reading: readNet(document) };
       answers.push(() => worker.onmessage?.({ data } as MessageEvent<ReadingAnswer>));
@@ -23,7 +30,7 @@ function heldWorker() {
     answers = [];
     for (const answer of due) answer();
   };
-  return { worker, questions, answerAll };
+  return { worker, questions, places, answerAll };
 }
 
 describe('reading in a worker', () => {
@@ -73,5 +80,30 @@ describe('reading in a worker', () => {
     answerAll();
     expect(told).toEqual(['points 1', 'whole 1']);
     expect(questions).toEqual([1, 2]);
+  });
+
+  it('asks for one head at a time, and of the later places only for the newest', async () => {
+    const { worker, places } = heldWorker();
+    const client = createReadingClient(() => worker);
+    expect(await client.headAt([1, 1])).toBeNull();
+    client.ask(documentWith({}), 1);
+    const [first, second, third] = [
+      [1, 1],
+      [2, 2],
+      [3, 3],
+    ].map(([x, y]) => client.headAt([x!, y!]));
+    expect(await second).toBeNull();
+    expect(places).toEqual([[1, 1]]);
+    const between = { before: 'a', after: 'b' };
+    const tell = (of: number, totalHead: number) =>
+      worker.onmessage?.({ data: { of, head: { totalHead, between } } } as MessageEvent<HeadAnswer>);
+    tell(1, 112);
+    expect(await first).toEqual({ of: 1, head: { totalHead: 112, between } });
+    expect(places).toEqual([
+      [1, 1],
+      [3, 3],
+    ]);
+    worker.onerror?.({} as ErrorEvent);
+    expect(await third).toBeNull();
   });
 });
