@@ -104,6 +104,11 @@ export const refusals = {
       'too-slow',
       `The page took longer than ${wholeNumber.format(seconds)} seconds to draw. Print it to a simpler PDF, or upload a scan of it.`,
     ),
+  noPicture: () =>
+    new RenderRefusal(
+      'page-size',
+      'These settings leave no picture. Set the corners in order around the drawing, and a crop within it.',
+    ),
   flood: () =>
     new RenderRefusal(
       'damaged',

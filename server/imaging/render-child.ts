@@ -39,6 +39,10 @@ async function obey(order: RenderOrder): Promise<RenderAnswer> {
   const { id } = order;
   if (order.kind === 'probe') return { id, kind: 'probed', result: await probe(order.file) };
   const onProgress = (share: number) => answer({ id, kind: 'progress', share });
+  if (order.kind === 'rendition') {
+    const { renderRendition } = await import('./rendition.ts');
+    return { id, kind: 'renditionMade', result: await renderRendition(order.request, onProgress) };
+  }
   const render = order.request.kind === 'pdf' ? (await pdfPart()).renderPdf : renderImage;
   return { id, kind: 'rendered', result: await render(order.request, onProgress) };
 }

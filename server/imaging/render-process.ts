@@ -6,7 +6,15 @@ import { fileURLToPath, pathToFileURL } from 'node:url';
 import { RENDER_MEMORY_BYTES, RENDER_SECONDS } from '#shared/contract/limits.ts';
 import { residentBytes } from './process-memory.ts';
 import { RenderRefusal, refusals } from './refusal.ts';
-import type { ProbeResult, RenderAnswer, RenderedSheet, RenderOrder, RenderRequest } from './render-types.ts';
+import type {
+  ProbeResult,
+  RenderAnswer,
+  RenderedRendition,
+  RenderedSheet,
+  RenderOrder,
+  RenderRequest,
+  RenditionRequest,
+} from './render-types.ts';
 
 export interface RenderLimits {
   memoryBytes: number;
@@ -30,6 +38,12 @@ export interface RenderProcess {
   close(): void;
 }
 
+/** The same process as a maker of cleaned-up pictures. */
+export interface RenditionProcess extends Pick<RenderProcess, 'peakBytes' | 'close'> {
+  /** @throws RenderRefusal, AbortError, or Error when the process itself failed */
+  renderRendition(request: RenditionRequest, options?: OrderOptions): Promise<RenderedRendition>;
+}
+
 const defaultLimits: RenderLimits = {
   memoryBytes: RENDER_MEMORY_BYTES,
   seconds: RENDER_SECONDS,
@@ -41,11 +55,14 @@ const plainPackages = new URL('./plain-packages.mjs', import.meta.url).href;
 const POLL_MS = 200;
 const KEPT_LOG = 8 * 1024;
 
-export function createRenderProcess(limits: Partial<RenderLimits> = {}, childFile?: string): RenderProcess {
+export function createRenderProcess(
+  limits: Partial<RenderLimits> = {},
+  childFile?: string,
+): RenderProcess & RenditionProcess {
   return new ForkedRenderProcess({ ...defaultLimits, ...limits }, childFile);
 }
 
-class ForkedRenderProcess implements RenderProcess {
+class ForkedRenderProcess implements RenderProcess, RenditionProcess {
   readonly #limits: RenderLimits;
   readonly #childFile: string;
   #child: ChildProcess | null = null;
@@ -69,6 +86,12 @@ class ForkedRenderProcess implements RenderProcess {
   async renderSheet(request: RenderRequest, options?: OrderOptions): Promise<RenderedSheet> {
     const answer = await this.#inTurn((id) => ({ id, kind: 'render', request }), options);
     if (answer.kind !== 'rendered') throw new Error(`unexpected answer: ${answer.kind}`);
+    return answer.result;
+  }
+
+  async renderRendition(request: RenditionRequest, options?: OrderOptions): Promise<RenderedRendition> {
+    const answer = await this.#inTurn((id) => ({ id, kind: 'rendition', request }), options);
+    if (answer.kind !== 'renditionMade') throw new Error(`unexpected answer: ${answer.kind}`);
     return answer.result;
   }
 

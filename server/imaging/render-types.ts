@@ -1,3 +1,5 @@
+import type { RenditionSettings } from '#shared/contract/renditions.ts';
+import type { BaseTiles } from './base-tiles.ts';
 import type { RefusalCode } from './refusal.ts';
 import type { FileKind } from './sniff.ts';
 
@@ -49,15 +51,27 @@ export interface RenderedSheet {
   note: string;
 }
 
+/** A cleaned-up picture of a sheet that is to be made of its base tiles. */
+export interface RenditionRequest {
+  base: BaseTiles;
+  settings: RenditionSettings;
+  /** Not there yet; afterwards as that of a sheet. */
+  outFolder: string;
+}
+
+export type RenderedRendition = Omit<RenderedSheet, 'dpi' | 'note'>;
+
 /** From the parent to the rendering process. */
 export type RenderOrder =
   | { id: number; kind: 'probe'; file: string }
-  | { id: number; kind: 'render'; request: RenderRequest };
+  | { id: number; kind: 'render'; request: RenderRequest }
+  | { id: number; kind: 'rendition'; request: RenditionRequest };
 
 /** From the rendering process to the parent. */
 export type RenderAnswer =
   | { id: number; kind: 'progress'; share: number }
   | { id: number; kind: 'probed'; result: ProbeResult }
   | { id: number; kind: 'rendered'; result: RenderedSheet }
+  | { id: number; kind: 'renditionMade'; result: RenderedRendition }
   | { id: number; kind: 'refused'; refusal: RefusalInfo }
   | { id: number; kind: 'failed'; message: string };

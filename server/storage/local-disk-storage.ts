@@ -50,6 +50,12 @@ export function createLocalDiskStorage(rootFolder: string): StoragePort {
       return use(file);
     },
 
+    async withLocalTree(prefix, use) {
+      const folder = path.join(root, checkedTilePrefix(prefix));
+      if ((await statOrNull(folder))?.isDirectory() !== true) throw missing(prefix);
+      return use(folder);
+    },
+
     async deletePrefix(prefix) {
       await rm(path.join(root, checkedTilePrefix(prefix)), { recursive: true, force: true });
     },

@@ -1,4 +1,4 @@
-import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
+import { mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { Readable } from 'node:stream';
@@ -68,6 +68,22 @@ export function createMemoryStorage(): MemoryStorage {
         const file = path.join(folder, 'file');
         await writeFile(file, bytesOf(key));
         return await use(file);
+      } finally {
+        await rm(folder, { recursive: true, force: true });
+      }
+    },
+    async withLocalTree(prefix, use) {
+      passFailure();
+      const below = [...files].filter(([key]) => key.startsWith(`${checkedTilePrefix(prefix)}/`));
+      if (below.length === 0) throw new StorageError('missing', `Nothing is kept under ${prefix}.`);
+      const folder = await mkdtemp(path.join(tmpdir(), 'tracehead-memory-'));
+      try {
+        for (const [key, bytes] of below) {
+          const file = path.join(folder, key.slice(prefix.length + 1));
+          await mkdir(path.dirname(file), { recursive: true });
+          await writeFile(file, bytes);
+        }
+        return await use(folder);
       } finally {
         await rm(folder, { recursive: true, force: true });
       }

@@ -25,6 +25,8 @@ export interface StoragePort {
   read(key: string, range?: ByteRange): Promise<Readable>;
   /** Runs `use` with a path under which the file can be read; the path is valid only while it runs. */
   withLocalFile<T>(key: string, use: (path: string) => Promise<T>): Promise<T>;
+  /** Runs `use` with a local folder that holds everything below a prefix of tiles; valid only while it runs. */
+  withLocalTree<T>(prefix: string, use: (folder: string) => Promise<T>): Promise<T>;
   /** Removes everything below a prefix; only `sheets/…` may be removed, because only tiles can be rebuilt. */
   deletePrefix(prefix: string): Promise<void>;
   /** Bytes still free where files are written. */

@@ -114,6 +114,22 @@ describe.each(adapters)('storage on %s', (_name, create) => {
     await expect(readdir(second)).rejects.toMatchObject({ code: 'ENOENT' });
   });
 
+  it('lends a folder with all tiles below a prefix, and nothing that lies elsewhere', async () => {
+    const prefix = tilePrefix('sheet-1', 'base');
+    await storage.putTree(prefix, await tileFolder({ '0/0_0.png': 'small', '1/1_1.png': 'large' }));
+    const lent = storage.withLocalTree(prefix, async (folder) => [
+      await readFile(path.join(folder, '0', '0_0.png'), 'utf8'),
+      await readFile(path.join(folder, '1', '1_1.png'), 'utf8'),
+    ]);
+    expect(await lent).toEqual(['small', 'large']);
+    await expect(storage.withLocalTree('sheets/none', async () => 1)).rejects.toMatchObject({
+      fault: 'missing',
+    });
+    await expect(storage.withLocalTree('sha256', async () => 1)).rejects.toMatchObject({
+      fault: 'kept-for-ever',
+    });
+  });
+
   it('removes the tiles of one sheet and nothing else', async () => {
     await storage.putTree('sheets/s1/base', await tileFolder({ '0/0_0.png': 'one' }));
     await storage.putTree('sheets/s10/base', await tileFolder({ '0/0_0.png': 'ten' }));
