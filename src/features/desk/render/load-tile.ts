@@ -1,15 +1,13 @@
-import type { SheetDto } from '#shared/contract/drawings.ts';
+import { type TileSource, tileAddress } from '../model/tile-address.ts';
 import type { Tile } from './tile-grid.ts';
 import type { TilePicture } from './tile-store.ts';
 
 export type LoadedTile = TilePicture & { readonly image: HTMLImageElement };
 
 /** Fetches one tile and decodes it off the main thread. */
-export function tileLoader(sheet: Pick<SheetDto, 'id' | 'tiles'>) {
+export function tileLoader(sheet: TileSource) {
   return async (tile: Tile, signal: AbortSignal): Promise<LoadedTile> => {
-    const { rendition } = sheet.tiles;
-    const address = `/api/v1/sheets/${sheet.id}/tiles/${rendition}/${tile.z}/${tile.x}_${tile.y}`;
-    const response = await fetch(address, { signal, credentials: 'same-origin' });
+    const response = await fetch(tileAddress(sheet, tile), { signal, credentials: 'same-origin' });
     if (!response.ok) throw new Error(`The tile answered ${response.status}.`);
     return decoded(await response.blob());
   };
