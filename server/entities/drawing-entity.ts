@@ -38,6 +38,10 @@ export class SheetEntity {
   @Column('integer') tileSizePx!: number;
   @Column('integer') maxZoom!: number;
   @Column('text') tileFormat!: 'png' | 'jpeg' | 'webp';
+  /** Finest level there is while the first view stands in for the sheet; null when all levels are there. */
+  @Column('integer', { nullable: true }) readyZoom!: number | null;
+  /** A page of vectors, drawn at a resolution that could have been another. */
+  @Column('boolean', { default: false }) isDrawn!: boolean;
   @Column('text', { default: '' }) note!: string;
   @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
 }
@@ -55,6 +59,8 @@ export class RenderJobEntity {
   @Column('double precision', { default: 0 }) pageProgress!: number;
   @Column('text', { default: '' }) message!: string;
   @Column('integer', { default: 0 }) attempts!: number;
+  /** Dots per inch that was chosen for the pages of vectors this run draws; null = the usual. */
+  @Column('integer', { nullable: true }) askedDpi!: number | null;
   /** While running: the run that holds the job, and until when it is believed alive. */
   @Column('uuid', { nullable: true }) runId!: string | null;
   @Column('timestamptz', { nullable: true }) leaseUntil!: Date | null;

@@ -24,7 +24,7 @@ export async function sheetFileKey(
   { sheetId, rendition, z, x, y }: TileAddress,
 ): Promise<{ key: string; mediaType: string } | null> {
   const sheet = await sheetById(manager, sheetId);
-  if (rendition !== sheet.rendition || z > sheet.maxZoom) return null;
+  if (rendition !== sheet.rendition || z > (sheet.readyZoom ?? sheet.maxZoom)) return null;
   const tilesPerSide = (lengthPx: number) =>
     Math.ceil(lengthPx / 2 ** (sheet.maxZoom - z) / sheet.tileSizePx);
   if (x >= tilesPerSide(sheet.widthPx) || y >= tilesPerSide(sheet.heightPx)) return null;

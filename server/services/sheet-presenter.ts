@@ -5,5 +5,8 @@ import type { SheetDto } from '#shared/contract/drawings.ts';
 export function presentSheet(sheet: SheetEntity): SheetDto {
   const { id, pageNumber, widthPx, heightPx, dpi, note } = sheet;
   const { rendition, tileSizePx, maxZoom, tileFormat: format } = sheet;
-  return { id, pageNumber, widthPx, heightPx, dpi, note, tiles: { rendition, tileSizePx, maxZoom, format } };
+  const ready = sheet.readyZoom === null ? {} : { readyZoom: sheet.readyZoom };
+  const tiles = { rendition, tileSizePx, maxZoom, ...ready, format };
+  const drawn = sheet.isDrawn ? { isDrawn: true } : {};
+  return { id, pageNumber, widthPx, heightPx, dpi, ...drawn, note, tiles };
 }

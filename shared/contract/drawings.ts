@@ -21,11 +21,15 @@ export const sheetDto = z.object({
   widthPx: z.number(),
   heightPx: z.number(),
   dpi: z.nullable(z.number()),
+  /** True for a page of vectors: `dpi` is what it was drawn at, and may be chosen anew. */
+  isDrawn: z.optional(z.boolean()),
   tiles: z.object({
     rendition: z.string(),
     tileSizePx: z.number(),
     /** Zoom levels 0 (whole sheet in one tile) to this one (full size). */
     maxZoom: z.number(),
+    /** While the sheet is being prepared: the finest level there is. Absent when all are there. */
+    readyZoom: z.optional(z.number()),
     format: z.enum(['png', 'jpeg', 'webp']),
   }),
   /** A plain sentence when the sheet was drawn reduced or with damage; empty otherwise. */
