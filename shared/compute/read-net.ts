@@ -1,5 +1,6 @@
 import { compareMeasured } from '#shared/compute/compare-measured.ts';
 import { NO_QUANTITY_DOUBT } from '#shared/compute/doubt/net-doubt.ts';
+import { doubtOverSection, setOutCauses } from '#shared/compute/doubt/place-doubt.ts';
 import type { FieldMemory } from '#shared/compute/field/field-memory.ts';
 import {
   extentOf,
@@ -61,12 +62,17 @@ type LinesRead = Omit<NetReading, 'measured'> & { readonly kept: KeptNet };
 
 function readLines(document: FlowNetDocument, memory: FieldMemory | null): LinesRead {
   const inputs = singleInputs(document);
-  const setOut = readSetOut(document);
+  const setOut = withPlaceDoubt(document, readSetOut(document));
   const points = placedPoints(document, setOut.map);
   const tangles = findTangles(netLinesOf(document), inputs.count.tracingAccuracyPx);
   // Nothing is worked out from a tangle: it would take its time over every crossing, and come to nothing.
   if (setOut.map === null || tangles.length > 0) return withoutNet(document, setOut, tangles, inputs, points);
   return readOnSection(document, setOut, setOut.map, inputs, memory);
+}
+
+function withPlaceDoubt(document: FlowNetDocument, setOut: SetOut): SetOut {
+  const placeDoubt = doubtOverSection(document, setOutCauses(document, setOut));
+  return { ...setOut, reading: { ...setOut.reading, placeDoubt } };
 }
 
 function withoutNet(

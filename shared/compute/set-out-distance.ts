@@ -8,16 +8,27 @@ type KnownPoint = { id: string; value: EntityOf<'knownPoint'> };
 type SetOutValue = EntityOf<'setOut'>;
 
 /**
- * Similarity from a length between the first two known points, one elevation, one offset and what is level.
+ * The two known points between which the known length lies: the first two of use `fit`, so that a scale bar may be
+ * marked after the point that gives the elevation. Null while there are not two.
+ */
+export function lengthEnds(points: readonly KnownPoint[]): readonly [KnownPoint, KnownPoint] | null {
+  const [first, second] = points.filter(({ value }) => value.use === 'fit');
+  return first === undefined || second === undefined ? null : [first, second];
+}
+
+/**
+ * Similarity from a length between two known points, as the ends of a scale bar, one elevation, one offset and what is
+ * level.
  *
  * `line`: the line through the two points is level, the side of it that is up being the one nearer the displayed
  * up; `sheet`: the sheet's own horizontal is level. The side to which offsets grow has to be said. The elevation and
  * the offset are taken from the first known point that has one.
  */
 export function fitByDistance(points: readonly KnownPoint[], setOut: SetOutValue): SetOutFit {
-  const [first, second] = points;
-  if (first === undefined || second === undefined) return missing('Mark two known points on the drawing.');
-  if (setOut.distance === null) return missing('Type the length between the two known points.');
+  const ends = lengthEnds(points);
+  if (ends === null) return missing('Mark the two ends of the known length on the drawing.');
+  const [first, second] = ends;
+  if (setOut.distance === null) return missing('Type the length between its two ends.');
   const du = second.value.at[0] - first.value.at[0];
   const dv = first.value.at[1] - second.value.at[1];
   const lengthPx = Math.hypot(du, dv);
@@ -39,7 +50,7 @@ export function fitByDistance(points: readonly KnownPoint[], setOut: SetOutValue
     withElevation.value,
     withOffset.value,
   );
-  return fittedBy(similarity, 2);
+  return fittedBy(similarity, { redundant: 0, turnFromSheet: setOut.level === 'sheet' });
 }
 
 /** Clockwise rotation of the section's horizontal in radians; null when a level line stands too steep to tell. */

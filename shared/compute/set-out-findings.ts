@@ -1,8 +1,9 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
-import type { FittedSection } from '#shared/compute/set-out-fit.ts';
-import { controlPairs } from '#shared/compute/set-out-points.ts';
+import type { FitGrounds, FittedSection } from '#shared/compute/set-out-fit.ts';
+import { controlPlaces } from '#shared/compute/set-out-points.ts';
+import { suspectAmong } from '#shared/compute/set-out-suspect.ts';
 import { questionEqualScales } from '#shared/compute/set-out-unequal.ts';
 import { type EntityOf, entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
@@ -17,9 +18,15 @@ const RESIDUAL_PART = 0.01;
 /** Declared scales that differ by less than this part are equal. */
 const EQUAL_PART = 0.01;
 
+type SetOutFigures = {
+  readonly grounds: FitGrounds;
+  readonly residual: number | null;
+  readonly impliedScale: number | null;
+};
+
 /**
  * Questions a set-out that fits but does not go together: a residual that no paper makes, values typed beside a
- * distance that deny it, scales that are not as declared, a scale other than the stated one. `residual` in the
+ * distance that deny it, one point that alone spoils the fit, a scale bar that denies it, scales that are not as declared, a scale other than the stated one. `residual` in the
  * document's length unit, null where there is none; `impliedScale` the n of 1:n along the level, null where the
  * resolution is unknown.
  */
@@ -27,8 +34,7 @@ export function setOutFindings(
   document: FlowNetDocument,
   setOut: EntityOf<'setOut'>,
   fit: FittedSection,
-  residual: number | null,
-  impliedScale: number | null,
+  { grounds, residual, impliedScale }: SetOutFigures,
 ): Finding[] {
   if (setOut.method === 'distance') {
     return [
@@ -43,6 +49,8 @@ export function setOutFindings(
     ...(setOut.scales === 'equal' ? [] : declaredFindings(fit)),
     ...scaleFindings(impliedScale, setOut.statedScale, fit),
     ...residualFindings(document, fit.map, residual),
+    ...suspectFindings(document, setOut, fit, grounds),
+    ...scaleBarFindings(document, setOut, fit.map),
   ];
 }
 
@@ -57,7 +65,7 @@ function equalScaleFindings(
     impliedScale === null || statedScale === null || !(statedScale > 0)
       ? null
       : (fit.along * statedScale) / impliedScale;
-  return questionEqualScales(controlPairs(entitiesOf(document, 'knownPoint')), fit, setOut, scalePerPx);
+  return questionEqualScales(controlPlaces(entitiesOf(document, 'knownPoint')), fit, setOut, scalePerPx);
 }
 
 function declaredFindings({ along, up }: FittedSection): Finding[] {
@@ -86,6 +94,60 @@ function residualFindings(document: FlowNetDocument, map: SectionMap, residual: 
       'residualLarge',
       `The known points disagree by ${figure}, more than a hundredth of the distance between them. Check the typed values, the places clicked and whether both directions have one scale.`,
       { cell: 'residual' },
+    ),
+  ];
+}
+
+function suspectFindings(
+  document: FlowNetDocument,
+  setOut: EntityOf<'setOut'>,
+  fit: FittedSection,
+  { turnFromSheet }: FitGrounds,
+): Finding[] {
+  const test = suspectAmong(document, { fit, scales: setOut.scales, turnFromSheet });
+  if (test.state !== 'suspect') return [];
+  const point = document.entities[test.id]?.value;
+  if (point?.kind !== 'knownPoint') return [];
+  return [
+    makeFinding(
+      'question',
+      'knownPointSuspect',
+      `${point.name || 'One known point'} alone spoils the fit: the other known points agree and put it ${fixedText(test.missPx, 1)} px from its mark (w = ${fixedText(test.w, 1)}, bound 3.3). Check its typed values and its mark.`,
+      { cell: 'residual', entityIds: [test.id], at: point.at },
+    ),
+  ];
+}
+
+/** Two known points without offset and elevation, with a length between them, are a scale bar that checks the fit. */
+export function scaleBarOf(
+  document: FlowNetDocument,
+  setOut: EntityOf<'setOut'>,
+  map: SectionMap,
+): { fitted: number; stated: number; ids: [string, string] } | null {
+  if (setOut.method !== 'points' || setOut.distance === null || !(setOut.distance > 0)) return null;
+  const [first, second] = entitiesOf(document, 'knownPoint').filter(
+    ({ value }) => value.offset === null && value.elevation === null,
+  );
+  if (first === undefined || second === undefined) return null;
+  const from = map.toSection(sheetPx(...first.value.at));
+  const to = map.toSection(sheetPx(...second.value.at));
+  return {
+    fitted: Math.hypot(to[0] - from[0], to[1] - from[1]),
+    stated: setOut.distance,
+    ids: [first.id, second.id],
+  };
+}
+
+function scaleBarFindings(document: FlowNetDocument, setOut: EntityOf<'setOut'>, map: SectionMap): Finding[] {
+  const bar = scaleBarOf(document, setOut, map);
+  if (bar === null || Math.abs(bar.fitted / bar.stated - 1) <= SCALE_TOLERANCE) return [];
+  const unit = unitNames(document.unitSystem).length;
+  return [
+    makeFinding(
+      'question',
+      'scaleBarDisagrees',
+      `The scale bar states ${plainText(bar.stated, 6)} ${unit} and is ${plainText(bar.fitted, 4)} ${unit} by the known points. Check its ends, its length, the typed values and whether both directions have one scale.`,
+      { cell: 'scale', entityIds: bar.ids },
     ),
   ];
 }

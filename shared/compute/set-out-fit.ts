@@ -1,3 +1,5 @@
+import { sheetPx } from '#shared/compute/frames.ts';
+import type { KnownPlace } from '#shared/compute/known-places.ts';
 import { type SectionMap, sectionMapOf, sectionMapOfFit } from '#shared/compute/section-map.ts';
 import { type Similarity, similarityRotation, similarityScale } from '#shared/compute/similarity.ts';
 import { sectionFitOf, type TwoScales } from '#shared/compute/two-scales.ts';
@@ -14,13 +16,31 @@ export type FittedSection = {
   readonly mirrored: boolean;
 };
 
+/** How a fit was come by. */
+export type FitGrounds = {
+  /** Typed offsets and elevations that the fit had beyond what it needs; 0 where it meets them all exactly. */
+  readonly redundant: number;
+  /** True when the sheet's own horizontal was taken for level because the points do not tell the turn. */
+  readonly turnFromSheet: boolean;
+};
+
+/** Sum of the squares by which a fit misses what is known, along and across the section's level, pixels². */
+export function squaresOfMiss({ map, along, up }: FittedSection, places: readonly KnownPlace[]): number {
+  return places.reduce((sum, { sheet, section }) => {
+    const [offset, elevation] = map.toSection(sheetPx(...sheet));
+    const across = (offset - (section[0] ?? offset)) / along;
+    const upwards = (elevation - (section[1] ?? elevation)) / up;
+    return sum + across * across + upwards * upwards;
+  }, 0);
+}
+
 /** What a way of setting out comes to: a fit, or the reason why there is none yet. */
 export type SetOutFit =
-  | { state: 'fitted'; fit: FittedSection; fitPoints: number }
+  | { state: 'fitted'; fit: FittedSection; grounds: FitGrounds }
   | { state: 'incomplete' | 'ambiguous' | 'refused'; finding: Finding };
 
-/** The answer of a way of setting out that fits a similarity to so many points. */
-export function fittedBy(similarity: Similarity, fitPoints: number): SetOutFit {
+/** The answer of a way of setting out that fits a similarity. */
+export function fittedBy(similarity: Similarity, grounds: FitGrounds): SetOutFit {
   const scale = similarityScale(similarity);
   return {
     state: 'fitted',
@@ -31,16 +51,16 @@ export function fittedBy(similarity: Similarity, fitPoints: number): SetOutFit {
       rotation: similarityRotation(similarity),
       mirrored: similarity.mirrored,
     },
-    fitPoints,
+    grounds,
   };
 }
 
-/** The answer of a way of setting out that fits two scales to so many points. */
-export function fittedByScales(scales: TwoScales, fitPoints: number): SetOutFit {
+/** The answer of a way of setting out that fits two scales. */
+export function fittedByScales(scales: TwoScales, grounds: FitGrounds): SetOutFit {
   const { along, up, rotation, mirrored } = scales;
   return {
     state: 'fitted',
     fit: { map: sectionMapOfFit(sectionFitOf(scales)), along, up, rotation, mirrored },
-    fitPoints,
+    grounds,
   };
 }

@@ -1,7 +1,14 @@
 import { makeFinding } from '#shared/compute/findings.ts';
+import { type KnownPlace, knownFigures, rangeOfKnown } from '#shared/compute/known-places.ts';
 import { fittedByScales, type SetOutFit } from '#shared/compute/set-out-fit.ts';
-import { askUp, contradiction, departureFromUp, UPRIGHT_LIMIT, upTurn } from '#shared/compute/set-out-up.ts';
-import type { ControlPair } from '#shared/compute/similarity.ts';
+import {
+  askUp,
+  contradiction,
+  departureFromUp,
+  turnUnknown,
+  UPRIGHT_LIMIT,
+  upTurn,
+} from '#shared/compute/set-out-up.ts';
 import { fitTwoScales, type TwoScales } from '#shared/compute/two-scales.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
 
@@ -9,30 +16,32 @@ import type { EntityOf } from '#shared/contract/document.ts';
 const LEAST_RANGE_PX = 10;
 
 /**
- * Two scales, along the level and upwards, through known points that are far apart; least squares in pixels. Three
- * points off one line tell the turn of the sheet and the side to which offsets grow; two, or points on one line, tell
- * the scales only when the sheet's own horizontal is said to be level. Clicks are base-raster pixels, typed values the
- * document's length unit.
+ * Two scales, along the level and upwards, through known places that are far apart; least squares in pixels. Where the
+ * places tell the turn of the sheet it is fitted; two points, points on one line, or offsets along one line and
+ * elevations along another tell the scales only when the sheet's own horizontal is said to be level. Clicks are
+ * base-raster pixels, typed values the document's length unit.
  */
-export function fitByScales(pairs: readonly ControlPair[], setOut: EntityOf<'setOut'>): SetOutFit {
-  if (rangeOf(pairs, 0) === 0 || rangeOf(pairs, 1) === 0) return oneDirectionOnly();
-  const byPoints = pairs.length >= 3 ? fitTwoScales(pairs, null) : null;
-  if (byPoints === null && setOut.level !== 'sheet') return turnUnknown();
-  const fit = byPoints ?? fitTwoScales(pairs, upTurn(setOut));
-  if (fit === null || !isUsable(fit, pairs)) return tooNear();
+export function fitByScales(places: readonly KnownPlace[], setOut: EntityOf<'setOut'>): SetOutFit {
+  if (rangeOfKnown(places, 0) === 0 || rangeOfKnown(places, 1) === 0) return oneDirectionOnly();
+  const byPoints = knownFigures(places) >= SCALES_UNKNOWNS ? fitTwoScales(places, null) : null;
+  if (byPoints === null && setOut.level !== 'sheet') return turnUnknown('two scales and the turn');
+  const fit = byPoints ?? fitTwoScales(places, upTurn(setOut));
+  if (fit === null || !isUsable(fit, places)) return tooNear();
   if (departureFromUp(fit.rotation, setOut) > UPRIGHT_LIMIT)
     return setOut.upQuarterTurns === null ? askUp() : contradiction();
   if (setOut.offsetsGrow !== null && (setOut.offsetsGrow === 'left') !== fit.mirrored) return contradiction();
-  return fittedByScales(fit, pairs.length);
+  const unknowns = SCALES_UNKNOWNS - (byPoints === null ? 1 : 0);
+  return fittedByScales(fit, {
+    redundant: knownFigures(places) - unknowns,
+    turnFromSheet: byPoints === null,
+  });
 }
 
-function rangeOf(pairs: readonly ControlPair[], axis: 0 | 1): number {
-  const values = pairs.map(({ section }) => section[axis]);
-  return Math.max(...values) - Math.min(...values);
-}
+/** Two scales, the turn and two shifts. */
+const SCALES_UNKNOWNS = 5;
 
-function isUsable({ along, up }: TwoScales, pairs: readonly ControlPair[]): boolean {
-  return rangeOf(pairs, 0) / along >= LEAST_RANGE_PX && rangeOf(pairs, 1) / up >= LEAST_RANGE_PX;
+function isUsable({ along, up }: TwoScales, places: readonly KnownPlace[]): boolean {
+  return rangeOfKnown(places, 0) / along >= LEAST_RANGE_PX && rangeOfKnown(places, 1) / up >= LEAST_RANGE_PX;
 }
 
 /** The answer to a drawing of two scales that is to be set out by one distance. */
@@ -55,18 +64,6 @@ function oneDirectionOnly(): SetOutFit {
       'missing',
       'setOutIncomplete',
       'For two scales the known points must differ in offset and in elevation. Mark a further point.',
-      { cell: 'scale' },
-    ),
-  };
-}
-
-function turnUnknown(): SetOutFit {
-  return {
-    state: 'ambiguous',
-    finding: makeFinding(
-      'missing',
-      'turnUnknown',
-      'Known points on one line do not tell two scales and the turn of the sheet. Mark a third point off their line, or say that the sheet’s own horizontal is level.',
       { cell: 'scale' },
     ),
   };

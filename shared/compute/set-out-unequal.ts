@@ -1,7 +1,7 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import type { FittedSection } from '#shared/compute/set-out-fit.ts';
+import { type KnownPlace, knownFigures } from '#shared/compute/known-places.ts';
+import { type FittedSection, squaresOfMiss } from '#shared/compute/set-out-fit.ts';
 import { upTurn } from '#shared/compute/set-out-up.ts';
-import type { ControlPair } from '#shared/compute/similarity.ts';
 import { fitTwoScales, missInPixels, type TwoScales } from '#shared/compute/two-scales.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
@@ -13,6 +13,8 @@ const UNEQUAL_PART = 0.05;
 const BETTER = 3;
 /** A stated scale is met within this part. */
 const STATED_PART = 0.02;
+/** Two scales, turn and shifts meet five figures exactly: only with more can they fit better than one scale. */
+const TOLD_BY_FIT = 6;
 /** A sheet that is turned by more than this is seldom a crooked scan. */
 const TURN_DEG = 5;
 
@@ -22,32 +24,32 @@ const TURN_DEG = 5;
  * unknown), or else by a turn that no scan has.
  */
 export function questionEqualScales(
-  pairs: readonly ControlPair[],
+  places: readonly KnownPlace[],
   fit: FittedSection,
   setOut: EntityOf<'setOut'>,
   scalePerPx: number | null,
 ): Finding[] {
-  const better = pairs.length >= 3 ? betterByTwo(pairs, fit) : statedForOne(pairs, fit, setOut, scalePerPx);
+  const enough = knownFigures(places) >= TOLD_BY_FIT;
+  const better = enough ? betterByTwo(places, fit) : statedForOne(places, fit, setOut, scalePerPx);
   if (better !== null) return [mustBeDeclared(better)];
-  return pairs.length === 2 ? questionTurn(fit) : [];
+  return enough ? [] : questionTurn(fit);
 }
 
-function betterByTwo(pairs: readonly ControlPair[], one: FittedSection): TwoScales | null {
-  const two = fitTwoScales(pairs, null);
+function betterByTwo(places: readonly KnownPlace[], one: FittedSection): TwoScales | null {
+  const two = fitTwoScales(places, null);
   if (two === null || !areUnequal(two)) return null;
-  const { along, up, rotation, mirrored } = one;
-  const missOfOne = missInPixels({ ...two, along, up, rotation, mirrored }, pairs);
-  return missOfOne >= BETTER * missInPixels(two, pairs) ? two : null;
+  const missOfOne = Math.sqrt(squaresOfMiss(one, places) / places.length);
+  return missOfOne >= BETTER * missInPixels(two, places) ? two : null;
 }
 
 function statedForOne(
-  pairs: readonly ControlPair[],
+  places: readonly KnownPlace[],
   fit: FittedSection,
   setOut: EntityOf<'setOut'>,
   scalePerPx: number | null,
 ): TwoScales | null {
   if (scalePerPx === null || isStated(fit.along, scalePerPx)) return null;
-  const level = fitTwoScales(pairs, upTurn(setOut));
+  const level = fitTwoScales(places, upTurn(setOut));
   if (level === null || !areUnequal(level)) return null;
   return isStated(level.along, scalePerPx) || isStated(level.up, scalePerPx) ? level : null;
 }

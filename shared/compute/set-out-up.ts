@@ -50,6 +50,19 @@ export function askOffsets(): SetOutFit {
   };
 }
 
+/** The answer to known points that leave open how the sheet is turned; `what`: what they do not tell. */
+export function turnUnknown(what: string): SetOutFit {
+  return {
+    state: 'ambiguous',
+    finding: makeFinding(
+      'missing',
+      'turnUnknown',
+      `Known points on one line, or offsets along one line and elevations along another, do not tell ${what} of the sheet. Mark a further point off the line, or one line of the drawing at both its ends, or say that the sheet’s own horizontal is level.`,
+      { cell: 'scale' },
+    ),
+  };
+}
+
 /** The answer to known points that deny what is said of the side or of the way that is up. */
 export function contradiction(): SetOutFit {
   return {

@@ -3,7 +3,7 @@ import { sheetPx } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { fitByDistance } from '#shared/compute/set-out-distance.ts';
 import { setOutFindings } from '#shared/compute/set-out-findings.ts';
-import type { FittedSection, SetOutFit } from '#shared/compute/set-out-fit.ts';
+import type { FitGrounds, FittedSection, SetOutFit } from '#shared/compute/set-out-fit.ts';
 import { fitByPoints } from '#shared/compute/set-out-points.ts';
 import { distanceGivesOneScale } from '#shared/compute/set-out-scales.ts';
 import { metresPerLengthUnit } from '#shared/compute/units.ts';
@@ -17,6 +17,8 @@ export type SetOut = {
   map: SectionMap | null;
   /** kh/kv that unequal scales imply where the section is drawn transformed; null elsewhere. */
   impliedRatio: number | null;
+  /** How the fit was come by; null while there is none. */
+  grounds: FitGrounds | null;
   findings: Finding[];
 };
 
@@ -30,6 +32,7 @@ const NOTHING: SetOutReading = {
   residual: null,
   residuals: [],
   impliedScale: null,
+  placeDoubt: null,
 };
 
 /**
@@ -58,7 +61,14 @@ export function readSetOut(document: FlowNetDocument): SetOut {
   }
   const fit = fitOf(document, setOut);
   if (fit.state !== 'fitted') return withoutMap(fit.state, fit.finding);
-  return withMap(document, fit.fit, fit.fitPoints, setOut);
+  return withMap(document, fit.fit, fit.grounds, setOut);
+}
+
+/** The map of a section alone, without what is to be said of it; null while it is not set out. */
+export function fittedMap(document: FlowNetDocument): SectionMap | null {
+  const setOut = singleOf(document, 'setOut')?.value ?? null;
+  const fit = setOut === null ? null : fitOf(document, setOut);
+  return fit?.state === 'fitted' ? fit.fit.map : null;
 }
 
 function fitOf(document: FlowNetDocument, setOut: EntityOf<'setOut'>): SetOutFit {
@@ -68,16 +78,22 @@ function fitOf(document: FlowNetDocument, setOut: EntityOf<'setOut'>): SetOutFit
 }
 
 function withoutMap(state: SetOutReading['state'], finding: Finding): SetOut {
-  return { reading: { ...NOTHING, state }, map: null, impliedRatio: null, findings: [finding] };
+  return {
+    reading: { ...NOTHING, state },
+    map: null,
+    impliedRatio: null,
+    grounds: null,
+    findings: [finding],
+  };
 }
 
 function withMap(
   document: FlowNetDocument,
   fit: FittedSection,
-  fitPoints: number,
+  grounds: FitGrounds,
   setOut: EntityOf<'setOut'>,
 ): SetOut {
-  const { residuals, residual } = residualsOf(document, fit.map, fitPoints);
+  const { residuals, residual } = residualsOf(document, fit.map, grounds.redundant);
   const { dpi } = document.sheet;
   const impliedScale =
     dpi === null ? null : (fit.along * metresPerLengthUnit(document.unitSystem) * dpi) / METRES_PER_INCH;
@@ -103,10 +119,13 @@ function withMap(
       residual,
       residuals,
       impliedScale,
+      // Worked out with the whole reading: it sets the section out again for every coordinate of every point.
+      placeDoubt: null,
     },
     map: fit.map,
+    grounds,
     impliedRatio: setOut.scales === 'transformedSection' ? (fit.along / fit.up) ** 2 : null,
-    findings: setOutFindings(document, setOut, fit, residual, impliedScale),
+    findings: setOutFindings(document, setOut, fit, { grounds, residual, impliedScale }),
   };
 }
 
@@ -119,18 +138,19 @@ function tooLarge(): Finding {
   );
 }
 
-function residualsOf(document: FlowNetDocument, map: SectionMap, fitPoints: number) {
+function residualsOf(document: FlowNetDocument, map: SectionMap, redundant: number) {
   const residuals: SetOutReading['residuals'] = [];
   let square = 0;
   let counted = 0;
   for (const { id, value } of entitiesOf(document, 'knownPoint')) {
-    if (value.offset === null || value.elevation === null) continue;
+    if (value.offset === null && value.elevation === null) continue;
     const fitted = map.toSection(sheetPx(...value.at));
-    const [offset, elevation] = [fitted[0] - value.offset, fitted[1] - value.elevation];
+    const offset = value.offset === null ? null : fitted[0] - value.offset;
+    const elevation = value.elevation === null ? null : fitted[1] - value.elevation;
     residuals.push({ id, offset, elevation });
-    // Two points are met exactly by their own fit: counting them would only make the checks look better.
-    if (value.use === 'fit' && fitPoints <= 2) continue;
-    square += offset * offset + elevation * elevation;
+    // A fit that needs every figure meets them all exactly: counting them would only make the checks look better.
+    if (value.use === 'fit' && redundant <= 0) continue;
+    square += (offset ?? 0) ** 2 + (elevation ?? 0) ** 2;
     counted += 1;
   }
   return { residuals, residual: counted === 0 ? null : Math.sqrt(square / counted) };

@@ -1,3 +1,10 @@
+import {
+  type CentredKnown,
+  type ControlPair,
+  centredKnown,
+  type KnownPlace,
+} from '#shared/compute/known-places.ts';
+
 /**
  * A similarity from the sheet to the section, with optional mirror.
  *
@@ -11,12 +18,6 @@ export type Similarity = {
   readonly sheetOrigin: readonly [x: number, y: number];
   readonly sectionOrigin: readonly [offset: number, elevation: number];
   readonly mirrored: boolean;
-};
-
-/** A pair of places that belong together: base-raster pixels and section coordinates. */
-export type ControlPair = {
-  readonly sheet: readonly [x: number, y: number];
-  readonly section: readonly [offset: number, elevation: number];
 };
 
 /**
@@ -53,27 +54,74 @@ export function similarityBackward(
 }
 
 /**
- * Least-squares similarity through control pairs, direct or mirrored. `pairs`: at least two, in pixels and section
- * units; both sides are shifted to their centroids before the sums are formed. Returns null when the pixel places
- * coincide. Source: closed-form two-dimensional conformal fit (Ghilani and Wolf, Adjustment Computations, ch. 18).
+ * Least-squares similarity through known places, direct or mirrored. `places`: pixels and section units; each offset and
+ * each elevation that is known is one equation, those of a kind shifted to their own centroid before the sums are
+ * formed. `rotation`: clockwise turn of the section's level on the sheet in radians where it is known otherwise, null to
+ * fit it. Returns null when the pixel places coincide or tell no turn, and with a given turn when they deny it. Source:
+ * closed-form two-dimensional conformal fit (Ghilani and Wolf, Adjustment Computations, ch. 18); its normal equations
+ * are no longer diagonal when a coordinate is missing.
  */
-export function fitSimilarity(pairs: readonly ControlPair[], mirrored: boolean): Similarity | null {
-  const sheetOrigin = centroidOf(pairs.map((pair) => pair.sheet));
-  const sectionOrigin = centroidOf(pairs.map((pair) => pair.section));
-  let re = 0;
-  let im = 0;
-  let square = 0;
-  for (const { sheet, section } of pairs) {
-    const u = sheet[0] - sheetOrigin[0];
-    const v = sheetOrigin[1] - sheet[1];
-    const along = (section[0] - sectionOrigin[0]) * (mirrored ? -1 : 1);
-    const up = section[1] - sectionOrigin[1];
-    re += u * along + v * up;
-    im += u * up - v * along;
-    square += u * u + v * v;
-  }
-  if (!(square > 0)) return null;
-  return { re: re / square, im: im / square, sheetOrigin, sectionOrigin, mirrored };
+export function fitSimilarity(
+  places: readonly KnownPlace[],
+  mirrored: boolean,
+  rotation: number | null = null,
+): Similarity | null {
+  const known = centredKnown(places);
+  if (known === null) return null;
+  const slope = rotation === null ? freeSlope(known, mirrored) : slopeAlong(known, mirrored, rotation);
+  if (slope === null) return null;
+  const { re, im } = slope;
+  const side = mirrored ? -1 : 1;
+  const { sheetOrigin, offsets, elevations } = known;
+  const [ox, oy] = [offsets.sheetOrigin[0] - sheetOrigin[0], sheetOrigin[1] - offsets.sheetOrigin[1]];
+  const [ex, ey] = [elevations.sheetOrigin[0] - sheetOrigin[0], sheetOrigin[1] - elevations.sheetOrigin[1]];
+  return {
+    re,
+    im,
+    sheetOrigin,
+    sectionOrigin: [offsets.origin - side * (re * ox - im * oy), elevations.origin - (im * ex + re * ey)],
+    mirrored,
+  };
+}
+
+/** Least part by which the weaker of the two normal equations must stand beside the stronger to tell the turn. */
+const TURN_TOLD = 0.01;
+
+function freeSlope(
+  { offsets, elevations }: CentredKnown,
+  mirrored: boolean,
+): { re: number; im: number } | null {
+  const side = mirrored ? -1 : 1;
+  const rr = offsets.uu + elevations.vv;
+  const ii = offsets.vv + elevations.uu;
+  const ri = elevations.uv - offsets.uv;
+  const bRe = side * offsets.uValue + elevations.vValue;
+  const bIm = -side * offsets.vValue + elevations.uValue;
+  const mean = (rr + ii) / 2;
+  const apart = Math.hypot((rr - ii) / 2, ri);
+  if (!(mean > 0) || mean - apart < TURN_TOLD * (mean + apart)) return null;
+  const determinant = rr * ii - ri * ri;
+  return { re: (bRe * ii - bIm * ri) / determinant, im: (bIm * rr - bRe * ri) / determinant };
+}
+
+function slopeAlong(
+  { offsets, elevations }: CentredKnown,
+  mirrored: boolean,
+  rotation: number,
+): { re: number; im: number } | null {
+  const side = mirrored ? -1 : 1;
+  const [cos, sin] = [Math.cos(rotation), Math.sin(rotation)];
+  const square =
+    offsets.uu * cos * cos -
+    2 * offsets.uv * cos * sin +
+    offsets.vv * sin * sin +
+    elevations.uu * sin * sin +
+    2 * elevations.uv * cos * sin +
+    elevations.vv * cos * cos;
+  const product =
+    side * (offsets.uValue * cos - offsets.vValue * sin) + elevations.uValue * sin + elevations.vValue * cos;
+  const scale = product / square;
+  return Number.isFinite(scale) && scale > 0 ? { re: scale * cos, im: scale * sin } : null;
 }
 
 /** Section units per pixel of a similarity; never negative. */
@@ -93,16 +141,4 @@ export function similarityRotation(map: Similarity): number {
 export function similarityResidual(map: Similarity, pair: ControlPair): [offset: number, elevation: number] {
   const [offset, elevation] = similarityForward(map, pair.sheet[0], pair.sheet[1]);
   return [offset - pair.section[0], elevation - pair.section[1]];
-}
-
-/** Mean of places; the first is taken off before the sum, so that large coordinates lose no figures. */
-export function centroidOf(points: ReadonlyArray<readonly [number, number]>): [number, number] {
-  const first = points[0] ?? [0, 0];
-  let x = 0;
-  let y = 0;
-  for (const point of points) {
-    x += point[0] - first[0];
-    y += point[1] - first[1];
-  }
-  return [first[0] + x / points.length, first[1] + y / points.length];
 }

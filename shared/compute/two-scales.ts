@@ -1,5 +1,5 @@
+import { type CentredKnown, centredKnown, type KnownPlace } from '#shared/compute/known-places.ts';
 import type { SectionFit } from '#shared/compute/section-map.ts';
-import { type ControlPair, centroidOf } from '#shared/compute/similarity.ts';
 
 /**
  * A turn of the sheet and one scale for each direction of the section, without shear: with u = x − x0 and v = y0 − y,
@@ -16,40 +16,31 @@ export type TwoScales = {
   readonly sectionOrigin: readonly [offset: number, elevation: number];
 };
 
-/** Sums over control pairs about their centroids. */
-type Moments = {
-  readonly sheetOrigin: readonly [number, number];
-  readonly sectionOrigin: readonly [number, number];
-  /** Σu·X, Σv·X, Σu·Z, Σv·Z. */
-  readonly uX: number;
-  readonly vX: number;
-  readonly uZ: number;
-  readonly vZ: number;
-  /** ΣX², ΣZ², Σ(u² + v²). */
-  readonly XX: number;
-  readonly ZZ: number;
-  readonly ww: number;
-};
-
 /** Least part of the spread of the points by which they must tell one turn from another. */
 const TURN_TOLD = 0.1;
 
 /**
- * Least-squares fit of two scales, in pixels: Σ|w − (p·X·e₁(θ) + q·Z·e₂(θ))|² is least, w = (u, v) being the clicks and
- * e₁ = (cos θ, −sin θ), e₂ = (sin θ, cos θ). For a given θ, p = Σ(w·e₁)X/ΣX² and q = Σ(w·e₂)Z/ΣZ²; what is then left to
- * be made greatest is a quadratic form in (cos θ, sin θ), so that θ is its principal axis. `rotation`: θ where it is
- * known, null to fit it. Pixels and section units. Null when offsets or elevations do not differ, or when the points lie
- * so nearly on one line that they tell no turn. Own derivation, an orthogonal affine fit.
+ * Least-squares fit of two scales, in pixels. With w = (u, v) the clicks, e₁ = (cos θ, −sin θ) and e₂ = (sin θ, cos θ),
+ * each known offset is one equation e₁·w = p·X + c₁ and each known elevation one e₂·w = q·Z + c₂; the sum of their
+ * squares is least. For a given θ, p = Σ(w·e₁)X/ΣX² and q = Σ(w·e₂)Z/ΣZ², each about the centroid of its own equations;
+ * what is then left to be made least is a quadratic form in (cos θ, sin θ), so that θ is its principal axis. `rotation`:
+ * θ where it is known, null to fit it. Pixels and section units. Null when offsets or elevations do not differ, or when
+ * the points tell no turn, as when all offsets are known along one line and all elevations along another. Own
+ * derivation, an orthogonal affine fit.
  */
-export function fitTwoScales(pairs: readonly ControlPair[], rotation: number | null): TwoScales | null {
-  const sums = momentsOf(pairs);
-  if (!(sums.XX > 0) || !(sums.ZZ > 0) || !(sums.ww > 0)) return null;
-  const turn = rotation ?? principalTurn(sums);
+export function fitTwoScales(places: readonly KnownPlace[], rotation: number | null): TwoScales | null {
+  const known = centredKnown(places);
+  if (known === null) return null;
+  const { sheetOrigin, offsets, elevations } = known;
+  if (!(offsets.values > 0) || !(elevations.values > 0)) return null;
+  const turn = rotation ?? principalTurn(known);
   if (turn === null) return null;
   const [cos, sin] = [Math.cos(turn), Math.sin(turn)];
-  const p = (sums.uX * cos - sums.vX * sin) / sums.XX;
-  const q = (sums.uZ * sin + sums.vZ * cos) / sums.ZZ;
+  const p = (offsets.uValue * cos - offsets.vValue * sin) / offsets.values;
+  const q = (elevations.uValue * sin + elevations.vValue * cos) / elevations.values;
   if (p === 0 || q === 0) return null;
+  const [ou, ov] = [offsets.sheetOrigin[0] - sheetOrigin[0], sheetOrigin[1] - offsets.sheetOrigin[1]];
+  const [eu, ev] = [elevations.sheetOrigin[0] - sheetOrigin[0], sheetOrigin[1] - elevations.sheetOrigin[1]];
   // Half a turn more changes the sign of both: up is where elevations grow.
   const flipped = q < 0;
   return {
@@ -57,37 +48,23 @@ export function fitTwoScales(pairs: readonly ControlPair[], rotation: number | n
     up: 1 / Math.abs(q),
     rotation: flipped ? Math.atan2(-sin, -cos) : Math.atan2(sin, cos),
     mirrored: flipped ? p > 0 : p < 0,
-    sheetOrigin: sums.sheetOrigin,
-    sectionOrigin: sums.sectionOrigin,
+    sheetOrigin,
+    sectionOrigin: [
+      offsets.origin - (ou * cos - ov * sin) / p,
+      elevations.origin - (eu * sin + ev * cos) / q,
+    ],
   };
 }
 
 /** θ that fits best; null where the points hardly tell it. */
-function principalTurn({ uX, vX, uZ, vZ, XX, ZZ, ww }: Moments): number | null {
-  const cc = (uX * uX) / XX + (vZ * vZ) / ZZ;
-  const ss = (vX * vX) / XX + (uZ * uZ) / ZZ;
-  const cs = (uZ * vZ) / ZZ - (uX * vX) / XX;
+function principalTurn({ offsets: o, elevations: e }: CentredKnown): number | null {
+  const cc = (o.uValue * o.uValue) / o.values + (e.vValue * e.vValue) / e.values - (o.uu + e.vv);
+  const ss = (o.vValue * o.vValue) / o.values + (e.uValue * e.uValue) / e.values - (o.vv + e.uu);
+  const cs = (e.uValue * e.vValue) / e.values - (o.uValue * o.vValue) / o.values - (e.uv - o.uv);
   const told = Math.hypot(cc - ss, 2 * cs);
-  if (!(Math.sqrt(told / ww) >= TURN_TOLD)) return null;
+  const spread = (o.uu + o.vv + e.uu + e.vv) / 2;
+  if (!(spread > 0) || !(Math.sqrt(told / spread) >= TURN_TOLD)) return null;
   return Math.atan2(2 * cs, cc - ss) / 2;
-}
-
-function momentsOf(pairs: readonly ControlPair[]): Moments {
-  const sheetOrigin = centroidOf(pairs.map((pair) => pair.sheet));
-  const sectionOrigin = centroidOf(pairs.map((pair) => pair.section));
-  const sums = { uX: 0, vX: 0, uZ: 0, vZ: 0, XX: 0, ZZ: 0, ww: 0 };
-  for (const { sheet, section } of pairs) {
-    const [u, v] = [sheet[0] - sheetOrigin[0], sheetOrigin[1] - sheet[1]];
-    const [X, Z] = [section[0] - sectionOrigin[0], section[1] - sectionOrigin[1]];
-    sums.uX += u * X;
-    sums.vX += v * X;
-    sums.uZ += u * Z;
-    sums.vZ += v * Z;
-    sums.XX += X * X;
-    sums.ZZ += Z * Z;
-    sums.ww += u * u + v * v;
-  }
-  return { ...sums, sheetOrigin, sectionOrigin };
 }
 
 /** The linear map that the two scales make between sheet and section. */
@@ -102,14 +79,15 @@ export function sectionFitOf(fit: TwoScales): SectionFit {
 }
 
 /** Root mean square distance in pixels between the clicks and the places that the fit gives them. */
-export function missInPixels(fit: TwoScales, pairs: readonly ControlPair[]): number {
+export function missInPixels(fit: TwoScales, places: readonly KnownPlace[]): number {
   const [cos, sin] = [Math.cos(fit.rotation), Math.sin(fit.rotation)];
-  const squares = pairs.map(({ sheet, section }) => {
-    const along = ((fit.mirrored ? -1 : 1) * (section[0] - fit.sectionOrigin[0])) / fit.along;
-    const up = (section[1] - fit.sectionOrigin[1]) / fit.up;
-    const du = along * cos + up * sin - (sheet[0] - fit.sheetOrigin[0]);
-    const dv = up * cos - along * sin - (fit.sheetOrigin[1] - sheet[1]);
-    return du * du + dv * dv;
-  });
-  return Math.sqrt(squares.reduce((sum, each) => sum + each, 0) / pairs.length);
+  const side = fit.mirrored ? -1 : 1;
+  const squares = places.reduce((sum, { sheet, section: [offset, elevation] }) => {
+    const [u, v] = [sheet[0] - fit.sheetOrigin[0], fit.sheetOrigin[1] - sheet[1]];
+    const along =
+      offset === null ? 0 : u * cos - v * sin - (side * (offset - fit.sectionOrigin[0])) / fit.along;
+    const up = elevation === null ? 0 : u * sin + v * cos - (elevation - fit.sectionOrigin[1]) / fit.up;
+    return sum + along * along + up * up;
+  }, 0);
+  return Math.sqrt(squares / places.length);
 }

@@ -57,7 +57,11 @@ const ADDED_TO_READING: Omit<NetReading, FirstReading> = {
   exits: [],
   stability: { heave: [], creep: null },
 };
-const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = { unitsPerPxUp: null, exaggeration: null };
+const ADDED_TO_SET_OUT: Omit<NetReading['setOut'], FirstSetOut> = {
+  unitsPerPxUp: null,
+  exaggeration: null,
+  placeDoubt: null,
+};
 const ADDED_TO_LINE: Omit<NetReading['lines'][number], FirstLine> = {};
 const ADDED_TO_POINT: Omit<PointReading, FirstPoint> = {
   byHand: null,

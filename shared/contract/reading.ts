@@ -43,6 +43,8 @@ export const finding = z.object({
 });
 export type Finding = z.infer<typeof finding>;
 
+const placeDoubt = z.object({ offset: z.number(), elevation: z.number() });
+
 export const setOutReading = z.object({
   state: z.enum(['fitted', 'incomplete', 'ambiguous', 'refused']),
   /** Length units per pixel along the level of the drawing; null until fitted. */
@@ -57,9 +59,17 @@ export const setOutReading = z.object({
   offsetsGrowLeft: z.nullable(z.boolean()),
   /** Root mean square residual of all points when more than the fit needs are given; null = two points only. */
   residual: z.nullable(z.number()),
-  residuals: z.array(z.object({ id: z.string(), offset: z.number(), elevation: z.number() })),
+  /** Fitted minus typed; null for a coordinate that is not typed. */
+  residuals: z.array(
+    z.object({ id: z.string(), offset: z.nullable(z.number()), elevation: z.nullable(z.number()) }),
+  ),
   /** 1:n that the fit implies at the sheet's dpi; null when dpi is unknown. */
   impliedScale: z.nullable(z.number()),
+  /**
+   * Half-widths (95 %) of offset and elevation that the known points leave to a place: in the middle of the frame, and
+   * at the corner of it where they are greatest. Null until fitted.
+   */
+  placeDoubt: z.nullable(z.object({ middle: placeDoubt, corner: placeDoubt })),
 });
 export type SetOutReading = z.infer<typeof setOutReading>;
 

@@ -1,14 +1,18 @@
 import { coverageFactor } from '#shared/compute/doubt/coverage.ts';
-import type { SheetPx } from '#shared/compute/frames.ts';
+import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
-import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
+import { fittedMap, type SetOut } from '#shared/compute/set-out.ts';
 import { singleInputs } from '#shared/compute/single-inputs.ts';
 import {
+  type DocumentEntity,
+  type EntityOf,
   entitiesOf,
   type FlowNetDocument,
+  type SheetPoint,
   singleOf,
   type VersionedEntity,
 } from '#shared/contract/document.ts';
+import type { SetOutReading } from '#shared/contract/reading.ts';
 
 /** What one coordinate of one known point does to the place of anything on the sheet. */
 export type SetOutCause = {
@@ -32,7 +36,7 @@ export function setOutCauses(document: FlowNetDocument, setOut: SetOut): SetOutC
   if (map === null) return [];
   const half = knownPointHalfWidth(document, setOut, map);
   return entitiesOf(document, 'knownPoint')
-    .filter(({ value }) => value.use === 'fit')
+    .filter(({ value }) => bears(value, document))
     .flatMap(({ id }) =>
       [0, 1].map((axis): SetOutCause | null => {
         const ahead = movedMap(document, id, axis, STEP_PX);
@@ -52,23 +56,38 @@ export function setOutCauses(document: FlowNetDocument, setOut: SetOut): SetOutC
     .filter((cause) => cause !== null);
 }
 
+/** True when the mark of a known point bears on the set-out: by a distance any may give its elevation or its offset. */
+function bears(value: EntityOf<'knownPoint'>, document: FlowNetDocument): boolean {
+  if (singleOf(document, 'setOut')?.value.method === 'distance') return true;
+  return value.use === 'fit' && (value.offset !== null || value.elevation !== null);
+}
+
 /**
- * Half-width (95 %) of one coordinate of a known point's mark in pixels: as stated, or from the residuals of a fit that
- * has more points than it needs, by Student's t for the degrees of freedom left (JCGM 100, 2008, 4.3.2 and G.3).
+ * Half-width (95 %) of one coordinate of a known point's mark in pixels: as stated, or from the residuals when there are
+ * more typed figures than the fit needs, by Student's t for the degrees of freedom left (JCGM 100, 2008, 4.3.2 and G.3).
+ * A fit by a distance needs one elevation and one offset.
  */
 export function knownPointHalfWidth(document: FlowNetDocument, setOut: SetOut, map: SectionMap): number {
   const stated = singleInputs(document).count.knownPointAccuracyPx;
   const { residuals } = setOut.reading;
   const along = setOut.reading.unitsPerPx ?? map.unitsPerPx;
   const up = setOut.reading.unitsPerPxUp ?? along;
-  const scales = singleOf(document, 'setOut')?.value.scales ?? 'equal';
-  const freedom = 2 * residuals.length - (scales === 'equal' ? SIMILARITY_PARAMETERS : TWO_SCALE_PARAMETERS);
+  const misses = residuals.flatMap((each) => [
+    ...(each.offset === null ? [] : [each.offset / along]),
+    ...(each.elevation === null ? [] : [each.elevation / up]),
+  ]);
+  const freedom = misses.length - neededFigures(document, setOut);
   if (freedom < 1) return stated;
-  const squares = residuals.reduce(
-    (sum, each) => sum + (each.offset / along) ** 2 + (each.elevation / up) ** 2,
-    0,
-  );
+  const squares = misses.reduce((sum, miss) => sum + miss * miss, 0);
   return Math.max(stated, coverageFactor(freedom) * Math.sqrt(squares / freedom));
+}
+
+/** Typed figures that the fit uses up. */
+function neededFigures(document: FlowNetDocument, { grounds }: SetOut): number {
+  const setOut = singleOf(document, 'setOut')?.value;
+  if (setOut?.method === 'distance') return 2;
+  const unknowns = setOut?.scales === 'equal' ? SIMILARITY_PARAMETERS : TWO_SCALE_PARAMETERS;
+  return unknowns - (grounds?.turnFromSheet ? 1 : 0);
 }
 
 /** Scale, rotation and two shifts. */
@@ -76,11 +95,61 @@ const SIMILARITY_PARAMETERS = 4;
 /** The same with a scale for each direction. */
 const TWO_SCALE_PARAMETERS = 5;
 
+/**
+ * Half-widths (95 %) that the known points leave to the offset and to the elevation of a place on the sheet, section
+ * units: the root of the sum of squares over their coordinates.
+ */
+export function placeDoubtAt(
+  causes: readonly SetOutCause[],
+  at: SheetPx,
+): { offset: number; elevation: number } {
+  const shifts = causes.map((cause) => cause.shift(at));
+  return {
+    offset: Math.hypot(...shifts.map(([offset]) => offset)),
+    elevation: Math.hypot(...shifts.map(([, elevation]) => elevation)),
+  };
+}
+
+/**
+ * The doubt of a place in the middle of what is marked and traced on the sheet, and at that corner of the box about it
+ * where the doubt is greatest. Null while the section is not set out.
+ */
+export function doubtOverSection(
+  document: FlowNetDocument,
+  causes: readonly SetOutCause[],
+): SetOutReading['placeDoubt'] {
+  if (causes.length === 0) return null;
+  const places = Object.values(document.entities).flatMap(({ value }) => placesOf(value));
+  const xs = places.map(([x]) => x);
+  const ys = places.map(([, y]) => y);
+  const [left, right, top, bottom] = [
+    least(xs),
+    -least(xs.map((x) => -x)),
+    least(ys),
+    -least(ys.map((y) => -y)),
+  ];
+  const [worst] = [sheetPx(left, top), sheetPx(right, top), sheetPx(left, bottom), sheetPx(right, bottom)]
+    .map((at) => placeDoubtAt(causes, at))
+    .sort((a, b) => Math.hypot(b.offset, b.elevation) - Math.hypot(a.offset, a.elevation));
+  const middle = placeDoubtAt(causes, sheetPx((left + right) / 2, (top + bottom) / 2));
+  return worst === undefined ? null : { middle, corner: worst };
+}
+
+/** `Math.min` takes its values as arguments, of which there may be too many. */
+const least = (values: readonly number[]) =>
+  values.reduce((low, value) => Math.min(low, value), Number.POSITIVE_INFINITY);
+
+function placesOf(value: DocumentEntity): readonly SheetPoint[] {
+  if (value.kind === 'knownPoint') return [value.at];
+  if (value.kind === 'line') return value.points;
+  return value.kind === 'readingPoint' && value.place.on === 'sheet' ? [value.place.at] : [];
+}
+
 function movedMap(document: FlowNetDocument, id: string, axis: number, by: number): SectionMap | null {
   const entity = document.entities[id] as VersionedEntity;
   if (entity.value.kind !== 'knownPoint') return null;
   const [x, y] = entity.value.at;
   const at: [number, number] = axis === 0 ? [x + by, y] : [x, y + by];
   const moved = { ...entity, value: { ...entity.value, at } };
-  return readSetOut({ ...document, entities: { ...document.entities, [id]: moved } }).map;
+  return fittedMap({ ...document, entities: { ...document.entities, [id]: moved } });
 }

@@ -79,7 +79,7 @@ describe('setting out by three known points questions what does not go together'
     expect(codes(corners)).toEqual([]);
     // Among three alone a mistyped elevation cannot be told from a scale of its own upwards: both withhold the figures.
     expect(codes([corners[0]!, corners[1]!, known(0, 0, 0, 130)])).toEqual(['scalesUnequal']);
-    expect(codes([...corners, known(2000, 0, 50, 130)])).toEqual(['residualLarge']);
+    expect(codes([...corners, known(2000, 0, 50, 130)])).toEqual(['residualLarge', 'knownPointSuspect']);
   });
 });
 
@@ -106,7 +106,7 @@ describe('setting out by known points', () => {
     const check = PUBLISHED['7-02'];
     expect(reading.unitsPerPx).toBeCloseTo(Math.hypot(check.a, check.b), 8);
     expect(reading.residual).toBeCloseTo(check.rms_per_point, 6);
-    const sizes = reading.residuals.map((r) => Math.hypot(r.offset, r.elevation));
+    const sizes = reading.residuals.map((r) => Math.hypot(r.offset!, r.elevation!));
     expect(Math.max(...sizes)).toBeCloseTo(check.max_point_residual, 6);
   });
 

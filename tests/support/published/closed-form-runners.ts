@@ -8,6 +8,7 @@ import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
 import { ringOf, signedArea } from '#shared/compute/geometry/polygon.ts';
 import { polylineOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
+import type { ControlPair } from '#shared/compute/known-places.ts';
 import { countDrops } from '#shared/compute/net/count.ts';
 import { seepagePerRun } from '#shared/compute/net/seepage.ts';
 import {
@@ -30,7 +31,6 @@ import { type PublishedValue, publishedValues } from '#shared/compute/quantities
 import { flowIn, seepagePerMetre } from '#shared/compute/quantities/seepage-volume.ts';
 import { resultantOf } from '#shared/compute/quantities/uplift.ts';
 import {
-  type ControlPair,
   fitSimilarity,
   similarityForward,
   similarityResidual,
