@@ -1,4 +1,5 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
+import type { SheetPoint } from '#shared/contract/document.ts';
 
 /**
  * To what a place near existing lines snaps, the first before the others: an end of a line; where two lines cross; one
@@ -32,6 +33,14 @@ export type ToolOverlay = {
   readonly snap: Snap | null;
   /** True where places should be set finer than the view shows. */
   readonly magnify: boolean;
+  /** What an edit asked for would do, and the rectangle drawn about what is to be chosen. */
+  readonly sketches?: readonly Sketch[];
+};
+
+/** `gained`: comes to a line; `lost`: goes; `frame`: outlines what is chosen; `place`: a single place. */
+export type Sketch = {
+  readonly kind: 'gained' | 'lost' | 'frame' | 'place';
+  readonly points: readonly SheetPoint[];
 };
 
 export const NO_OVERLAY: ToolOverlay = { rubber: null, snap: null, magnify: false };

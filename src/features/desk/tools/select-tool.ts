@@ -1,15 +1,19 @@
 import { deskToolText as text } from '#client/text/desk-tools.ts';
 import { profileText } from '#client/text/profiles.ts';
-import { sheetPx } from '#shared/compute/frames.ts';
+import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { segmentAt } from '#shared/compute/geometry/hit-test.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
 import type { LocalOp } from '../model/document-ops.ts';
 import { NO_SELECTION, selectOne } from '../model/selection.ts';
 import { toolForLine } from '../model/tool-choice.ts';
+import { beginFrame, endFrame, toggleAt } from './choose-several.ts';
 import { dragTo, grabMark, grabVertex, letGo } from './drag.ts';
+import { dropChosen, grabChosen, moveChosen } from './edit-move.ts';
+import { answerEdit, removeChosen } from './edit-step.ts';
 import { withoutPoint, withPointInserted } from './line-points.ts';
 import { type Picked, pickAt, reachOf } from './pick.ts';
 import {
+  type Modifiers,
   rest,
   stay,
   type ToolCommand,
@@ -23,20 +27,17 @@ import {
 export function selectStep(state: ToolState, event: ToolEvent, context: ToolContext): ToolStep {
   switch (event.type) {
     case 'press':
-      return (
-        grabVertex(context, event.at, event.keys) ??
-        grabMark(context, event.at, ['readingPoint', 'knownPoint']) ??
-        stay(state)
-      );
+      return pressed(event.at, event.keys, context) ?? stay(state);
     case 'move':
-      return state.at === 'dragging' ? dragTo(state, event.at, event.keys, context) : stay(state);
+      return moved(state, event.at, event.keys, context);
     case 'release':
-      return state.at === 'dragging' ? letGo(state, event.at, event.keys, context) : stay(state);
+      return released(state, event.at, event.keys, context);
     case 'click':
       return clicked(event, context);
     case 'abandonDrag':
       return rest({ do: 'preview', values: {} });
     case 'cancel':
+      if (context.pendingEdit != null) return rest({ do: 'ask', edit: null });
       return rest({ do: 'preview', values: {} }, { do: 'select', selection: NO_SELECTION });
     case 'takeBack':
     case 'remove':
@@ -46,7 +47,32 @@ export function selectStep(state: ToolState, event: ToolEvent, context: ToolCont
   }
 }
 
+/** What a press takes hold of; null when the sheet is to be panned by it, or a click to follow. */
+function pressed(at: SheetPx, keys: Modifiers, context: ToolContext): ToolStep | null {
+  // What is asked for is answered by the click.
+  if (context.pendingEdit != null) return null;
+  const vertex = grabVertex(context, at, keys);
+  if (vertex !== null) return vertex;
+  if (keys.shift) return beginFrame(context, at);
+  return grabChosen(context, at) ?? grabMark(context, at, ['readingPoint', 'knownPoint']);
+}
+
+function moved(state: ToolState, at: SheetPx, keys: Modifiers, context: ToolContext): ToolStep {
+  if (state.at === 'dragging') return dragTo(state, at, keys, context);
+  if (state.at === 'moving') return moveChosen(state, at, keys, context);
+  return state.at === 'framing' ? { state: { ...state, to: at }, commands: [] } : stay(state);
+}
+
+function released(state: ToolState, at: SheetPx, keys: Modifiers, context: ToolContext): ToolStep {
+  if (state.at === 'dragging') return letGo(state, at, keys, context);
+  if (state.at === 'moving') return dropChosen(state, at, keys, context);
+  return state.at === 'framing' ? endFrame(state, at, context) : stay(state);
+}
+
 function clicked(event: Extract<ToolEvent, { type: 'click' }>, context: ToolContext): ToolStep {
+  if (context.pendingEdit != null)
+    return event.count > 1 ? rest() : answerEdit(event.at, event.keys, context);
+  if (event.keys.shift) return event.count > 1 ? rest() : toggleAt(context, event.at);
   const inserted = event.count > 1 ? insertAt(event, context) : null;
   if (inserted !== null) return inserted;
   const picked = pickAt(context, event.at);
@@ -97,6 +123,7 @@ function removeSelected(context: ToolContext): ToolStep {
   // A soil is no mark on the sheet: it is removed in its form, with what refers to it.
   if (context.readOnly || context.selection.kind === 'none' || context.selection.kind === 'soil')
     return rest();
+  if (context.selection.kind === 'several') return removeChosen(context);
   const chosen = chosenLine(context);
   const vertex = context.selection.vertex;
   if (chosen !== null && vertex !== null && chosen.line.points.length > 2) {

@@ -2,10 +2,12 @@ import type { SheetPx } from '#shared/compute/frames.ts';
 import { IDENTITY } from '#shared/compute/linear-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
-import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import type { EditEvent } from '../model/pending-edit.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import type { ToolOverlay } from '../model/tool-overlay.ts';
+import { editStep } from './edit-step.ts';
 import { overlayOf, stepTool } from './tool-set.ts';
 import {
   AT_REST,
@@ -16,6 +18,7 @@ import {
   type ToolContext,
   type ToolEvent,
   type ToolState,
+  type ToolStep,
 } from './tool-types.ts';
 
 /** What the view around the tools contributes to their context. */
@@ -23,6 +26,8 @@ export type HostView = { zoom: number; reachPx: number; balloons: readonly Ballo
 
 export type ToolHost = {
   handle(event: ToolEvent, view: HostView): void;
+  /** Does something with what is chosen, whatever tool is in hand. */
+  edit(event: EditEvent, view: HostView): void;
   overlay(at: SheetPx | null, keys: Modifiers, view: HostView): ToolOverlay;
   /** True while the tool keeps the pointer, so that the sheet must not be panned by it. */
   grabs(): boolean;
@@ -33,6 +38,7 @@ export type ToolHost = {
 /** Runs the tool in hand against a desk store: keeps the machine's state and carries its commands out. */
 export function createToolHost(store: DeskStore): ToolHost {
   let state: ToolState = AT_REST;
+  let copied: readonly DocumentEntity[] = [];
   const mapOf = rememberedMap();
 
   function contextFor(view: HostView): ToolContext {
@@ -42,6 +48,8 @@ export function createToolHost(store: DeskStore): ToolHost {
       document,
       selection,
       draft,
+      pendingEdit: state.pendingEdit,
+      copied,
       tool,
       choice: lineChoiceOf(tool, boundaryKind),
       hiddenKinds,
@@ -55,11 +63,27 @@ export function createToolHost(store: DeskStore): ToolHost {
     };
   }
 
+  function take(step: ToolStep): void {
+    state = step.state;
+    for (const command of step.commands) {
+      if (command.do === 'keep') copied = command.values;
+      else perform(store, command);
+    }
+  }
+
+  /** A move by arrow keys becomes a step before anything else happens. */
+  function settle(view: HostView): void {
+    if (state.at === 'nudging') take(editStep(state, { type: 'settle' }, contextFor(view)));
+  }
+
   return {
     handle(event, view) {
-      const step = stepTool(state, event, contextFor(view));
-      state = step.state;
-      for (const command of step.commands) perform(store, command);
+      settle(view);
+      take(stepTool(state, event, contextFor(view)));
+    },
+    edit(event, view) {
+      if (event.type !== 'nudge') settle(view);
+      take(editStep(state, event, contextFor(view)));
     },
     overlay: (at, keys, view) => overlayOf(state, at, keys, contextFor(view)),
     grabs: () => isGrabbing(state),
@@ -67,7 +91,7 @@ export function createToolHost(store: DeskStore): ToolHost {
   };
 }
 
-function perform(store: DeskStore, command: ToolCommand): void {
+function perform(store: DeskStore, command: Exclude<ToolCommand, { do: 'keep' }>): void {
   switch (command.do) {
     case 'run':
       store.run(command.label, command.ops);
@@ -86,6 +110,12 @@ function perform(store: DeskStore, command: ToolCommand): void {
       break;
     case 'intent':
       store.emitIntent(command.intent);
+      break;
+    case 'ask':
+      store.setPendingEdit(command.edit);
+      break;
+    case 'notice':
+      store.setNotice(command.text);
       break;
   }
 }

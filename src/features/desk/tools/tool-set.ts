@@ -1,8 +1,9 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
 import type { ToolId } from '../model/tool-choice.ts';
-import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
+import { NO_OVERLAY, type Sketch, type ToolOverlay } from '../model/tool-overlay.ts';
 import { snapWhileDragging } from './drag.ts';
+import { sketchesAt } from './edit-step.ts';
 import { growingEnd } from './line-points.ts';
 import { knownPointStep, noteStep, readingPointStep } from './place-tool.ts';
 import { nextProfilePlace, profileStep } from './profile-tool.ts';
@@ -40,6 +41,9 @@ export function overlayOf(
 ): ToolOverlay {
   const magnify = context.tool === 'knownPoint' || state.at === 'dragging';
   if (at === null || context.readOnly) return { ...NO_OVERLAY, magnify: magnify && at !== null };
+  if (state.at === 'framing') return { ...NO_OVERLAY, sketches: [frameSketch(state.from, at)] };
+  if (state.at === 'moving') return NO_OVERLAY;
+  if (context.pendingEdit != null) return { ...NO_OVERLAY, sketches: sketchesAt(at, keys, context) };
   if (state.at === 'dragging') {
     const { target } = state;
     const snap = target.kind === 'vertex' ? snapWhileDragging(target, at, keys, context) : null;
@@ -54,4 +58,18 @@ export function overlayOf(
   const end = line === null ? null : growingEnd(line, context.draft?.atStart ?? false);
   const rubber = end === null ? null : ([sheetPx(...end), nextPlace(at, keys, context)] as const);
   return { rubber, snap: snapAt(context, at, keys, context.draft?.lineId ?? null), magnify };
+}
+
+/** The outline of the rectangle that is drawn about what is to be chosen. */
+function frameSketch([left, top]: SheetPx, [right, bottom]: SheetPx): Sketch {
+  return {
+    kind: 'frame',
+    points: [
+      [left, top],
+      [right, top],
+      [right, bottom],
+      [left, bottom],
+      [left, top],
+    ],
+  };
 }
