@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the account's menu, which every page shows. */
-export const accountMenuText = {
+const en = {
   accountTitle: 'Your account',
   accountMenu: (initials: string, name: string) => `${initials}, account of ${name}`,
   people: 'People',
@@ -7,3 +9,4 @@ export const accountMenuText = {
   signOut: 'Sign out',
   admin: 'administrator',
 } as const;
+export const accountMenuText = inLanguage({ en });

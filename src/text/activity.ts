@@ -1,4 +1,6 @@
-export const activityText = {
+import { inLanguage } from './language.ts';
+
+const en = {
   none: 'Nothing has happened here yet.',
   more: 'Show earlier activity',
   somebody: 'The system',
@@ -7,3 +9,4 @@ export const activityText = {
   what: 'What',
   caption: 'Activity, newest first',
 } as const;
+export const activityText = inLanguage({ en });

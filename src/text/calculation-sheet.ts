@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words around the calculation sheet. */
-export const calculationSheetText = {
+const en = {
   title: 'Calculation sheet',
   leadRevision: 'The frozen record as a PDF, with the section, all figures, their sources and the decision.',
   leadDraft: 'The net as it is saved, as a PDF marked DRAFT on each page.',
@@ -15,3 +17,4 @@ export const calculationSheetText = {
   print: 'Print',
   backToCheck: 'Back to the check',
 } as const;
+export const calculationSheetText = inLanguage({ en });

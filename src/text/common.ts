@@ -1,4 +1,6 @@
-export const commonText = {
+import { inLanguage } from './language.ts';
+
+const en = {
   product: 'Tracehead',
   loading: 'Loading…',
   skip: 'Skip to the content',
@@ -13,3 +15,4 @@ export const commonText = {
   bringBack: 'Bring back',
   noneYet: 'none yet',
 } as const;
+export const commonText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the seepage along a dam. */
-export const damSeepageText = {
+const en = {
   title: 'Seepage along the dam',
   pageTitle: (dam: string) => `${dam}: seepage along the dam`,
   lead: 'Choose one net for each section. Between neighbouring sections the mean of their seepages is taken; nothing is added beyond the first and the last.',
@@ -38,3 +40,4 @@ export const damSeepageText = {
   startAgain: 'Start with no net chosen',
   fileName: (dam: string) => `${dam} seepage along the dam.csv`,
 } as const;
+export const damSeepageText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the forms that make a dam and change its facts and people. */
-export const damSettingsText = {
+const en = {
   newDamLead: 'The dam in whose units and to whose datum everything on it is read.',
   name: 'Name of the dam',
   unitSystem: 'Unit system',
@@ -42,3 +44,4 @@ export const damSettingsText = {
   nameDone: 'The settings are saved.',
   cannotManage: 'Engineers of this dam and administrators change its settings and people.',
 } as const;
+export const damSettingsText = inLanguage({ en });

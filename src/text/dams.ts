@@ -1,4 +1,5 @@
 import type { DamRole } from '#shared/contract/actions.ts';
+import { inLanguage } from './language.ts';
 
 const ROLE_NAMES: Record<DamRole, string> = {
   engineer: 'engineer',
@@ -14,7 +15,7 @@ const ROLE_TASKS: Record<DamRole, string> = {
 const plural = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
 const withArticle = (role: string) => `${/^[aeiou]/.test(role) ? 'an' : 'a'} ${role}`;
 
-export const damsText = {
+const en = {
   title: 'Dams',
   yours: 'Your dams',
   dam: 'Dam',
@@ -55,3 +56,4 @@ export const damsText = {
   activityOf: (name: string) => `${name}: activity`,
   allActivity: 'All activity',
 } as const;
+export const damsText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the desk's model: what is said when a step cannot be taken, and how steps taken back are named. */
-export const deskCanvasText = {
+const en = {
   readOnly: 'This net can be looked at but not changed here.',
   inConflict:
     'Someone else changed this meanwhile. Compare the two versions and choose one before you change it again.',
@@ -13,3 +15,4 @@ export const deskCanvasText = {
   redone: (label: string) => `Did again: ${label}`,
   keptMine: 'Put my version on top',
 } as const;
+export const deskCanvasText = inLanguage({ en });

@@ -1,7 +1,8 @@
 import type { LineKind, PermeabilityUnit } from '#shared/contract/document.ts';
+import { inLanguage } from './language.ts';
 
 /** Words of the forms beside the sheet. */
-export const formText = {
+const enFormText = {
   close: 'Close',
   show: 'Show',
   remove: 'Remove',
@@ -9,8 +10,9 @@ export const formText = {
   source: 'Source',
   sourceHint: 'Where the figures come from: drawing, report, operator.',
 } as const;
+export const formText = inLanguage({ en: enFormText });
 
-export const setOutText = {
+const enSetOutText = {
   title: 'Known points',
   lead: 'Mark two points whose offset and elevation you know, as far apart as you can. Further points check the fit.',
   place: 'Place known points',
@@ -70,8 +72,9 @@ export const setOutText = {
     setOut: 'changed how the section is set out',
   },
 } as const;
+export const setOutText = inLanguage({ en: enSetOutText });
 
-export const waterText = {
+const enWaterText = {
   title: 'Water levels',
   headwater: (unit: string) => `Headwater, ${unit}`,
   tailwater: (unit: string) => `Tailwater, ${unit}`,
@@ -109,8 +112,9 @@ export const waterText = {
   doubtTooSmall: 'A ± cannot be below zero.',
   labels: { levels: 'changed the water levels' },
 } as const;
+export const waterText = inLanguage({ en: enWaterText });
 
-export const permeabilityText = {
+const enPermeabilityText = {
   title: 'Permeability',
   lead: 'In a section of one soil, alike in all directions, only the seepage depends on it. Where soils differ, or k across the bedding is another, heads and pressures depend on the ratios too.',
   k: 'Permeability k',
@@ -144,8 +148,9 @@ export const permeabilityText = {
   },
   label: 'changed the permeability',
 } as const;
+export const permeabilityText = inLanguage({ en: enPermeabilityText });
 
-export const soilText = {
+const enSoilText = {
   listTitle: 'Soils of their own',
   listLead: 'Regions between traced soil boundaries whose soil is another than the one above.',
   add: 'Add a soil',
@@ -172,8 +177,9 @@ export const soilText = {
     placeRemoved: (name: string) => `removed a place of the soil ${name}`,
   },
 } as const;
+export const soilText = inLanguage({ en: enSoilText });
 
-export const countText = {
+const enCountText = {
   title: 'Count of drops and channels',
   drops: 'Drops counted on the drawing, Nd',
   dropsHint: 'From the headwater boundary, 0, to the outlet: 11 lines are 10 drops.',
@@ -193,8 +199,9 @@ export const countText = {
   accuracyTooSmall: 'It cannot be below zero.',
   label: 'changed the count',
 } as const;
+export const countText = inLanguage({ en: enCountText });
 
-export const lineText = {
+const enLineText = {
   properties: 'Properties',
   kind: 'Kind',
   kinds: {
@@ -229,8 +236,9 @@ export const lineText = {
     removed: (kind: string) => `removed a line: ${kind.toLowerCase()}`,
   },
 } as const;
+export const lineText = inLanguage({ en: enLineText });
 
-export const pointFormText = {
+const enPointFormText = {
   title: 'Type a reading point',
   name: 'Name',
   nameHint: 'As the instrument is named.',
@@ -239,9 +247,11 @@ export const pointFormText = {
   add: 'Add the point',
   nameNeeded: 'Give it a name.',
 } as const;
+export const pointFormText = inLanguage({ en: enPointFormText });
 
-export const findingsText = {
+const enFindingsText = {
   none: 'Nothing found. The checks made are of the set-out, the levels, the order of the lines and the count.',
   weights: { wrong: 'Wrong', missing: 'Missing', question: 'Question', note: 'Note' },
   show: 'Show on the sheet',
 } as const;
+export const findingsText = inLanguage({ en: enFindingsText });

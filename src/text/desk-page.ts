@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the desk as a page. */
-export const deskPageText = {
+const en = {
   drawingRevision: (number: string, revision: string) =>
     revision === '' ? number : `${number} rev ${revision}`,
   untitledDrawing: 'Drawing',
@@ -25,3 +27,4 @@ export const deskPageText = {
     namingNeeded: 'Give it a name.',
   },
 } as const;
+export const deskPageText = inLanguage({ en });

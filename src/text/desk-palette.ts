@@ -1,16 +1,18 @@
 import type { BoundaryKind, ToolId } from '#client/features/desk/model/tool-choice.ts';
+import { inLanguage } from './language.ts';
 
 export type PaletteTool = ToolId | 'waterLevels';
 
 /** The offer of a first guess of the phreatic line. */
-export const firstGuessText = {
+const enFirstGuessText = {
   offer: 'Not on the drawing? Start from a guess by the geometry and adjust it.',
   draw: 'Draw a first guess',
   drew: 'drew a first guess of the phreatic line',
 } as const;
+export const firstGuessText = inLanguage({ en: enFirstGuessText });
 
 /** Words of the tool palette. */
-export const deskPaletteText = {
+const enDeskPaletteText = {
   title: 'Drawing tools',
   setOut: 'Set out',
   trace: 'Trace',
@@ -70,3 +72,4 @@ export const deskPaletteText = {
   chosenHead: (head: string, unit: string) => `Head ${head} ${unit}.`,
   chosenKeys: 'Drag a vertex to move it, double-click a segment to put one in, Delete removes.',
 } as const;
+export const deskPaletteText = inLanguage({ en: enDeskPaletteText });

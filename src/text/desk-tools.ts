@@ -1,4 +1,5 @@
 import type { LineKind, TracedLine } from '#shared/contract/document.ts';
+import { inLanguage } from './language.ts';
 
 const LINE_WORDS: Record<LineKind, string> = {
   equipotential: 'equipotential',
@@ -18,7 +19,7 @@ function lineWord(line: Pick<TracedLine, 'line' | 'name'>): string {
 }
 
 /** Names of the steps the tools take, as the activity list and undo show them. */
-export const deskToolText = {
+const en = {
   lineWord,
   lineKind: (kind: LineKind) => LINE_WORDS[kind],
   began: (line: TracedLine) => `began ${article(lineWord(line))}`,
@@ -33,6 +34,7 @@ export const deskToolText = {
   movedMark: (name: string) => `moved ${name}`,
   removedMark: (name: string) => `removed ${name}`,
 } as const;
+export const deskToolText = inLanguage({ en });
 
 function article(words: string): string {
   return /^[aeiou]/.test(words) ? `an ${words}` : `a ${words}`;

@@ -1,6 +1,7 @@
+import { fixedText } from '#client/lib/figures.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
+import { inLanguage } from './language.ts';
 
 export type PointerWords = {
   readonly offset: number;
@@ -12,7 +13,7 @@ export type PointerWords = {
 };
 
 /** Words on and around the sheet. */
-export const deskViewText = {
+const en = {
   sheetRole: 'drawing',
   keysHelp:
     'Arrow keys move the sheet, plus and minus zoom, zero shows it whole. Letters choose tools: K known points, E equipotential, F flow line, P phreatic line, B boundary, R reading point, L profile, N note. Enter finishes a line, Backspace takes back its last point, Escape cancels.',
@@ -43,3 +44,4 @@ export const deskViewText = {
   lineActions: 'Line being drawn',
   lastStep: 'Last step',
 } as const;
+export const deskViewText = inLanguage({ en });

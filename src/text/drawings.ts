@@ -1,4 +1,5 @@
 import type { DrawingDto, NetSummary, RenderJobDto } from '#shared/contract/drawings.ts';
+import { inLanguage } from './language.ts';
 
 const plural = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
 const MB = 1024 * 1024;
@@ -43,7 +44,7 @@ export function jobText(job: RenderJobDto): string {
   return `Preparing page ${Math.min(job.pagesDone + 1, job.pagesTotal)} of ${job.pagesTotal}`;
 }
 
-export const drawingsText = {
+const en = {
   title: 'Drawings',
   add: 'Add a drawing',
   photo: 'Take a photo',
@@ -174,3 +175,4 @@ export const drawingsText = {
   showPutAwayHere: 'Show put-away sections and nets',
   more: (name: string) => `More for ${name}`,
 } as const;
+export const drawingsText = inLanguage({ en });

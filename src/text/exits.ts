@@ -1,7 +1,8 @@
 import type { PublishedValue } from '#shared/compute/quantities/published-values.ts';
+import { inLanguage } from './language.ts';
 
 /** Words of the exit gradients, heave, creep and seepage. */
-export const exitsText = {
+const en = {
   title: 'Exits and quantities',
   workingOut: 'working out…',
   show: 'Show',
@@ -68,3 +69,4 @@ export const exitsText = {
     fromMemory: 'from memory, not looked up',
   },
 } as const;
+export const exitsText = inLanguage({ en });

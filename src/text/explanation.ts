@@ -1,7 +1,8 @@
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText } from '#client/lib/figures.ts';
+import { inLanguage } from './language.ts';
 
 /** Words that tell how a reading came about and how far it can be trusted. */
-export const explanationText = {
+const en = {
   title: (name: string) => `How ${name || 'the point'} is read`,
   open: 'Show on the sheet',
   goThere: 'Go to the point',
@@ -67,3 +68,4 @@ export const explanationText = {
   placeOfNet: 'Independent solution',
   result: 'Figure',
 } as const;
+export const explanationText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the steps that can be taken back and done again. */
-export const historyText = {
+const en = {
   undoSteps: 'Steps to take back',
   redoSteps: 'Steps to do again',
   undoList: 'Choose how far to take back',
@@ -18,3 +20,4 @@ export const historyText = {
   dropped: (count: number) =>
     `${count} older ${count === 1 ? 'step does' : 'steps do'} not fit into what this browser keeps, and ${count === 1 ? 'ends' : 'end'} with a reload.`,
 } as const;
+export const historyText = inLanguage({ en });

@@ -1,7 +1,8 @@
-import { fixedText } from '#shared/text/number-text.ts';
+import { fixedText } from '#client/lib/figures.ts';
+import { inLanguage } from './language.ts';
 
 /** Words of the independent solution beside the traced net. */
-export const independentText = {
+const en = {
   title: 'Independent solution',
   lead: 'Laplace’s equation solved by finite elements between the boundaries drawn, with the levels and permeabilities entered. The traced equipotentials and flow lines are not used.',
   solve: 'Solve the section',
@@ -64,3 +65,4 @@ export const independentText = {
   /** A small part, never shown as nothing. */
   within: (part: number) => (part < 1e-4 ? 'less than 0.01 %' : `${fixedText(100 * part, 2)} %`),
 } as const;
+export const independentText = inLanguage({ en });

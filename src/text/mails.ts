@@ -1,4 +1,5 @@
 import type { MailDto } from '#shared/contract/mails.ts';
+import { inLanguage } from './language.ts';
 
 const STATES: Record<MailDto['state'], string> = {
   waiting: 'waiting',
@@ -6,7 +7,7 @@ const STATES: Record<MailDto['state'], string> = {
   failed: 'not delivered',
 };
 
-export const mailsText = {
+const en = {
   title: 'Mails',
   mail: 'Mail',
   lead: 'Mails this installation has sent or is sending.',
@@ -28,3 +29,4 @@ export const mailsText = {
   messageId: 'Message-ID',
   open: 'Open the link',
 } as const;
+export const mailsText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words for what instruments showed, beside the net. */
-export const measuredText = {
+const en = {
   title: (name: string) => `Measured at ${name || 'the point'}`,
   lead: 'What the instrument of this point showed. The difference is measured minus net: positive is adverse, the ground holds more water than the net says.',
   open: 'Type what was measured',
@@ -35,3 +37,4 @@ export const measuredText = {
     tip: (name: string) => `typed how well the elevation of ${name} is known`,
   },
 } as const;
+export const measuredText = inLanguage({ en });

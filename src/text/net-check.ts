@@ -1,7 +1,8 @@
-import { fixedText, signedText } from '#shared/text/number-text.ts';
+import { fixedText, signedText } from '#client/lib/figures.ts';
+import { inLanguage } from './language.ts';
 
 /** Words of the net check beside the sheet. */
-export const netCheckText = {
+const enNetCheckText = {
   title: 'Net check',
   drawing: 'How the net is drawn',
   working: 'The net is being read…',
@@ -35,12 +36,14 @@ export const netCheckText = {
     'The section solved from its boundaries, levels and permeabilities alone, without the lines traced.',
   open: 'Open the independent solution',
 } as const;
+export const netCheckText = inLanguage({ en: enNetCheckText });
 
 /** Words drawn over the sheet. */
-export const checkMarkText = {
+const enCheckMarkText = {
   ratio: (ratio: number) => `B/L ${fixedText(ratio, 2)}`,
   angle: (degrees: number) => `${Math.round(degrees)}°`,
   channel: (share: number) => `flow × ${fixedText(share, 2)}`,
   part: (part: number) => fixedText(part, 2),
   difference: (head: number, unit: string) => `${signedText(head, 2)} ${unit}`,
 } as const;
+export const checkMarkText = inLanguage({ en: enCheckMarkText });

@@ -1,6 +1,7 @@
 import type { NetFileQuestion } from '#shared/contract/net-files.ts';
+import { inLanguage } from './language.ts';
 
-export const netFileText = {
+const en = {
   button: 'Net from a file',
   buttonOf: (label: string) => `Net from a file for ${label}`,
   title: (label: string) => `Net from a file for ${label}`,
@@ -26,3 +27,4 @@ export const netFileText = {
   } satisfies Record<NetFileQuestion, string>,
   made: 'The net is made.',
 } as const;
+export const netFileText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the notes. */
-export const notesText = {
+const en = {
   title: 'Notes',
   open: (count: number) => (count === 1 ? '1 open' : `${count} open`),
   noneOpen: 'none open',
@@ -22,3 +24,4 @@ export const notesText = {
   sendAnswer: 'Write answer',
   needed: 'Type what you want to say.',
 } as const;
+export const notesText = inLanguage({ en });

@@ -1,4 +1,5 @@
 import type { PersonDto } from '#shared/contract/people.ts';
+import { inLanguage } from './language.ts';
 
 const STATES: Record<PersonDto['state'], string> = {
   active: 'active',
@@ -6,7 +7,7 @@ const STATES: Record<PersonDto['state'], string> = {
   deactivated: 'deactivated',
 };
 
-export const peopleText = {
+const en = {
   title: 'People',
   lead: 'Everybody with an account here. Parts on a dam are given on the dam.',
   activity: 'Accounts and invitations',
@@ -37,3 +38,4 @@ export const peopleText = {
   invited: (email: string) => `${email} has been written to.`,
   done: (name: string) => `The account of ${name} is changed.`,
 } as const;
+export const peopleText = inLanguage({ en });

@@ -1,7 +1,8 @@
 import type { PhreaticEnd } from '#shared/contract/reading-phreatic.ts';
+import { inLanguage } from './language.ts';
 
 /** Words of the check of the phreatic line. */
-export const phreaticText = {
+const en = {
   title: 'Phreatic line',
   lead: 'An equipotential meets the phreatic line at the elevation of its own head. Departure: head minus elevation.',
   guessed: 'It is still a first guess.',
@@ -21,3 +22,4 @@ export const phreaticText = {
   end: (name: string, expected: string, degrees: string) => `${name}: ${expected}; drawn ${degrees}° off.`,
   noEnd: (name: string) => `${name}: it does not reach a face.`,
 } as const;
+export const phreaticText = inLanguage({ en });

@@ -1,4 +1,6 @@
-export const problemText = {
+import { inLanguage } from './language.ts';
+
+const en = {
   noConnectionTitle: 'No connection',
   noConnection:
     'The server could not be reached. Check the connection and try again; what you typed is still here.',
@@ -20,3 +22,4 @@ export const problemText = {
   notFound: 'There is nothing at this address, or you have no part on the dam it belongs to.',
   askForPart: 'Ask an engineer of the dam to give you a part on it.',
 } as const;
+export const problemText = inLanguage({ en });

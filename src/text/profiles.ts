@@ -1,10 +1,11 @@
 import type { EntityOf } from '#shared/contract/document.ts';
 import type { ProfileSample } from '#shared/contract/reading-quantities.ts';
+import { inLanguage } from './language.ts';
 
 type ProfileUse = EntityOf<'profile'>['use'];
 
 /** Words of profiles: lines, lists of places and grids along which the net is read. */
-export const profileText = {
+const en = {
   title: 'Profiles',
   freeName: (number: number) => `Profile ${number}`,
   unnamed: 'unnamed profile',
@@ -102,3 +103,4 @@ export const profileText = {
   },
   needsSetOut: 'Set the section out first: typed places need the scale.',
 } as const;
+export const profileText = inLanguage({ en });

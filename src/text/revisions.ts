@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of sending for checking and of the check itself. */
-export const sendingText = {
+const enSendingText = {
   button: 'Send for checking',
   title: (label: string) => `Send for checking as revision ${label}`,
   lead: 'The net and its figures are frozen as they stand and kept. The reviewer gets a mail with a link.',
@@ -22,8 +24,9 @@ export const sendingText = {
   send: 'Send',
   sent: (label: string, name: string) => `Revision ${label} has been sent to ${name}.`,
 } as const;
+export const sendingText = inLanguage({ en: enSendingText });
 
-export const checkText = {
+const enCheckText = {
   crumb: (label: string) => `Revision ${label}`,
   heading: (label: string) => `Revision ${label}`,
   frozen: 'Frozen when it was sent; later changes to the net do not appear here.',
@@ -56,3 +59,4 @@ export const checkText = {
   downloadCsv: 'Download CSV',
   panes: { sheet: 'Sheet', schedule: 'Schedule', notes: 'Notes', check: 'Check' },
 } as const;
+export const checkText = inLanguage({ en: enCheckText });

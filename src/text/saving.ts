@@ -1,7 +1,8 @@
+import { inLanguage } from './language.ts';
 import { problemText } from './problems.ts';
 
 /** Words about saving. */
-export const savingText = {
+const en = {
   saved: (time: string) => `Saved ${time}`,
   allSaved: 'Saved',
   saving: 'Saving…',
@@ -104,3 +105,4 @@ export const savingText = {
     finished: 'Finished',
   },
 } as const;
+export const savingText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the schedule of reading points. */
-export const scheduleText = {
+const enScheduleText = {
   title: 'Reading points',
   lead: (datum: string, gammaW: string, unit: string) =>
     `${datum === '' ? 'elevations as typed' : `elevations to ${datum}`}, pressure with γw = ${gammaW} ${unit}`,
@@ -49,11 +51,15 @@ export const scheduleText = {
   },
   needsSetOut: 'Set the section out first: a typed place needs the scale.',
 } as const;
+export const scheduleText = inLanguage({ en: enScheduleText });
 
 /** Words for figures that are typed. */
-export const typedNumberText = {
+const enTypedNumberText = {
   notANumber: 'Not a number. Type it as 118.25 or 118,25.',
+  ambiguous: (typed: string) =>
+    `${typed} may be ${typed.replace(/[.,]/, '')} or a decimal. Leave the thousands unparted, or type a further zero.`,
   needed: 'A figure is needed here.',
   mustBePositive: 'It has to be greater than zero.',
   tooLarge: 'This figure is too large. Check the decimal point and the unit.',
 } as const;
+export const typedNumberText = inLanguage({ en: enTypedNumberText });

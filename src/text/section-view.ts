@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the switch between the drawing and the section that it stands for. */
-export const sectionViewText = {
+const en = {
   title: 'The section is shown',
   views: {
     sheet: 'As drawn',
@@ -14,3 +16,4 @@ export const sectionViewText = {
   drawnTransformed: 'Drawn as a transformed section: cells are squares as drawn.',
   noCommon: 'The soils differ in kh/kv or in dip: they have no common transformed view.',
 } as const;
+export const sectionViewText = inLanguage({ en });

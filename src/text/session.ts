@@ -1,6 +1,7 @@
 import { MIN_PASSWORD_LENGTH } from '#shared/contract/limits.ts';
+import { inLanguage } from './language.ts';
 
-export const sessionText = {
+const en = {
   signIn: 'Sign in',
   signingIn: 'Signing in…',
   signInLead: 'Flow nets on dam drawings, read to pore pressures with their reasons.',
@@ -53,3 +54,4 @@ export const sessionText = {
     'Ends your sign-in in every browser, this one too. Do this when a computer with your sign-in was lost.',
   endAll: 'Sign out everywhere',
 } as const;
+export const sessionText = inLanguage({ en });

@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the title block. A cell's fault is said here in a word or two; the whole sentence is the finding's own. */
-export const titleBlockText = {
+const en = {
   name: 'Title block',
   labels: {
     section: 'Section',
@@ -87,3 +89,4 @@ export const titleBlockText = {
     calculation: 'Show the revisions',
   },
 } as const;
+export const titleBlockText = inLanguage({ en });

@@ -5,8 +5,10 @@ import {
   NameForm,
   PasswordForm,
 } from '#client/features/session/components/account-forms.tsx';
+import { LocaleForm } from '#client/features/session/components/locale-form.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { accountMenuText } from '#client/text/account-menu.ts';
+import { localeText } from '#client/text/locale.ts';
 import { sessionText as text } from '#client/text/session.ts';
 import { AppFrame } from '../app-frame.tsx';
 
@@ -25,6 +27,11 @@ export function AccountPage() {
           <Panel title={text.name}>
             <div className="p-3.5">
               <NameForm name={person.name} />
+            </div>
+          </Panel>
+          <Panel title={localeText.title}>
+            <div className="p-3.5">
+              <LocaleForm />
             </div>
           </Panel>
           <Panel title={text.password}>

@@ -1,9 +1,9 @@
 import { Cell, HeadCell, Table } from '#client/components/table.tsx';
+import { fixedText, sentenceText } from '#client/lib/figures.ts';
 import { damSeepageText as text } from '#client/text/dam-seepage.ts';
 import type { FlowUnit } from '#shared/compute/quantities/seepage-volume.ts';
 import { metresPerLengthUnit } from '#shared/compute/units.ts';
 import type { DamSeepageDto } from '#shared/contract/dam-seepage.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { FlowFigure } from './flow-figure.tsx';
 
@@ -24,7 +24,7 @@ export function LengthTable({ found, unit }: { found: DamSeepageDto; unit: FlowU
               key={caution.code}
               className="border-l-[3px] border-attention bg-doubt px-3.5 py-1.5 text-attention"
             >
-              {caution.text}
+              {sentenceText(caution.text)}
             </li>
           ))}
         </ul>

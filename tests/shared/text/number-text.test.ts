@@ -51,3 +51,18 @@ describe('units as text', () => {
     expect(elevationUnit('US', '')).toBe('ft');
   });
 });
+
+describe('the decimal mark', () => {
+  it('is the point unless another one is asked for', () => {
+    expect(fixedText(118.25, 2)).toBe('118.25');
+    expect(fixedText(118.25, 2, ',')).toBe('118,25');
+    expect(plusMinusText(-1.5, 0.25, 2, ',')).toBe('−1,50 ± 0,25');
+    expect(powerParts(-2.5e-7, 2, ',')).toEqual({ mantissa: '−2,5', exponent: -7 });
+    expect(plainText(10, 3, ',')).toBe('10');
+  });
+
+  it('keeps the sign of a value that rounds to zero away', () => {
+    expect(fixedText(-0.001, 2, ',')).toBe('0,00');
+    expect(signedText(0.001, 2, ',')).toBe('0,00');
+  });
+});

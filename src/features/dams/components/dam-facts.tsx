@@ -1,3 +1,4 @@
+import { enteredText, fixedText } from '#client/lib/figures.ts';
 import { damsText as text } from '#client/text/dams.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 
@@ -7,7 +8,7 @@ const LEVEL_DECIMALS = 2;
 export function levelText(level: number | null, dam: Pick<DamDto, 'unitSystem' | 'datum'>): string {
   if (level === null) return text.levelUnset;
   const unit = dam.unitSystem === 'SI' ? 'm' : 'ft';
-  return `${level.toFixed(LEVEL_DECIMALS).replace('-', '−')} ${unit} ${dam.datum}`.trim();
+  return `${fixedText(level, LEVEL_DECIMALS)} ${unit} ${dam.datum}`.trim();
 }
 
 export const gammaUnit = (dam: Pick<DamDto, 'unitSystem'>) => (dam.unitSystem === 'SI' ? 'kN/m³' : 'lb/ft³');
@@ -17,8 +18,8 @@ export function DamFacts({ dam }: { dam: DamDto }) {
   return (
     <>
       {text.fullSupply} {levelText(dam.fullSupplyLevel, dam)}.{' '}
-      {dam.unitSystem === 'SI' ? text.siUnits : text.usUnits}, γ<sub>w</sub> = {dam.gammaW} {gammaUnit(dam)}.{' '}
-      {text.youAre(dam.roles)}
+      {dam.unitSystem === 'SI' ? text.siUnits : text.usUnits}, γ<sub>w</sub> = {enteredText(dam.gammaW)}{' '}
+      {gammaUnit(dam)}. {text.youAre(dam.roles)}
     </>
   );
 }

@@ -3,6 +3,8 @@ import { Button } from '#client/components/button.tsx';
 import { NumberField, SelectField, TextField } from '#client/components/field.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { fieldMessage } from '#client/lib/api-problem.ts';
+import { enteredText } from '#client/lib/figures.ts';
+import { numberFault } from '#client/lib/number-fault.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { commonText } from '#client/text/common.ts';
 import { damSettingsText as settings } from '#client/text/dam-settings.ts';
@@ -13,7 +15,7 @@ import type { DamInput } from '../api/dam-mutations.ts';
 import { gammaUnit } from './dam-facts.tsx';
 
 /** Usual unit weight of water in the system's own unit. */
-const USUAL_GAMMA: Record<UnitSystem, string> = { SI: '9.81', US: '62.4' };
+const USUAL_GAMMA: Record<UnitSystem, number> = { SI: 9.81, US: 62.4 };
 
 interface Typed {
   name: string;
@@ -27,17 +29,18 @@ const typedFrom = (dam: DamDto | undefined): Typed => ({
   name: dam?.name ?? '',
   unitSystem: dam?.unitSystem ?? 'SI',
   datum: dam?.datum ?? '',
-  fullSupplyLevel: dam?.fullSupplyLevel?.toString() ?? '',
-  gammaW: dam?.gammaW.toString() ?? USUAL_GAMMA.SI,
+  fullSupplyLevel: enteredText(dam?.fullSupplyLevel ?? null),
+  gammaW: enteredText(dam?.gammaW ?? USUAL_GAMMA.SI),
 });
 
 /** The input, or the message of the field that cannot be read. */
 function readTyped(typed: Typed): { input: DamInput } | { field: keyof Typed; message: string } {
   const level = typed.fullSupplyLevel.trim() === '' ? null : parseTypedNumber(typed.fullSupplyLevel);
   if (level === null && typed.fullSupplyLevel.trim() !== '')
-    return { field: 'fullSupplyLevel', message: settings.notANumber };
+    return { field: 'fullSupplyLevel', message: numberFault(typed.fullSupplyLevel) };
   const gammaW = parseTypedNumber(typed.gammaW);
-  if (gammaW === null || gammaW <= 0) return { field: 'gammaW', message: settings.gammaPositive };
+  if (gammaW === null) return { field: 'gammaW', message: numberFault(typed.gammaW) };
+  if (gammaW <= 0) return { field: 'gammaW', message: settings.gammaPositive };
   const { name, unitSystem, datum } = typed;
   return { input: { name, unitSystem, datum, fullSupplyLevel: level, gammaW } };
 }
@@ -67,8 +70,8 @@ export function DamForm({ dam, error, busy, submitLabel, isMain = false, onSubmi
     if ('input' in read && !busy) onSubmit(read.input);
   };
   const changeSystem = (unitSystem: UnitSystem) => {
-    const untouched = typed.gammaW === USUAL_GAMMA[typed.unitSystem];
-    set(untouched ? { unitSystem, gammaW: USUAL_GAMMA[unitSystem] } : { unitSystem });
+    const untouched = typed.gammaW === enteredText(USUAL_GAMMA[typed.unitSystem]);
+    set(untouched ? { unitSystem, gammaW: enteredText(USUAL_GAMMA[unitSystem]) } : { unitSystem });
   };
   return (
     <form onSubmit={submit} className="flex flex-col gap-3">

@@ -1,8 +1,8 @@
+import { enteredText, fixedText } from '#client/lib/figures.ts';
 import { lineText } from '#client/text/desk-forms.ts';
 import { measuredText } from '#client/text/measured.ts';
 import { savingText as text } from '#client/text/saving.ts';
 import type { DocumentEntity, EntityOf } from '#shared/contract/document.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 
 export interface ConflictFact {
   name: string;
@@ -23,7 +23,7 @@ export function conflictFacts(mine: DocumentEntity | null, theirs: DocumentEntit
 }
 
 type Words = Record<string, string>;
-const figure = (value: number | null) => (value === null ? '–' : String(value));
+const figure = (value: number | null) => (value === null ? '–' : enteredText(value));
 const place = ([x, y]: readonly [number, number]) => `${fixedText(x, 1)}, ${fixedText(y, 1)} px`;
 
 function wordsOf(value: DocumentEntity): Words {
@@ -70,7 +70,8 @@ function placeWords(at: Extract<DocumentEntity, { kind: 'readingPoint' }>['place
 function measuredWords(measured: EntityOf<'readingPoint'>['measured']): string {
   if (measured === null) return '–';
   const { value, as, plusMinus, on } = measured;
-  const figures = plusMinus === null ? String(value) : `${value} ± ${plusMinus}`;
+  const figures =
+    plusMinus === null ? enteredText(value) : `${enteredText(value)} ± ${enteredText(plusMinus)}`;
   return [measuredText.kinds[as], figures, on].filter(Boolean).join(', ');
 }
 
@@ -85,6 +86,9 @@ function memberWords(value: DocumentEntity): Words {
   return Object.fromEntries(
     Object.entries(value)
       .filter(([member]) => member in names)
-      .map(([member, held]) => [names[member] ?? member, held === null ? '–' : String(held)]),
+      .map(([member, held]) => [
+        names[member] ?? member,
+        typeof held === 'number' || held === null ? figure(held) : String(held),
+      ]),
   );
 }

@@ -1,7 +1,7 @@
 import { Button } from '#client/components/button.tsx';
+import { plainText } from '#client/lib/figures.ts';
 import { soilText, countText as text } from '#client/text/desk-forms.ts';
 import { type EntityOf, entitiesOf, singleOf } from '#shared/contract/document.ts';
-import { plainText } from '#shared/text/number-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure, NeededFigure } from './form-fields.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';

@@ -1,8 +1,8 @@
 import type { ReactNode } from 'react';
 import { useStore } from 'zustand';
+import { fixedText } from '#client/lib/figures.ts';
 import { exitsText as text } from '#client/text/exits.ts';
 import { scheduleText } from '#client/text/schedule.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { ExitTable } from './exit-table.tsx';

@@ -1,7 +1,7 @@
+import { plainText } from '#client/lib/figures.ts';
 import { netCheckText as text } from '#client/text/net-check.ts';
 import type { LineReading } from '#shared/contract/reading.ts';
 import type { NetCheckReading, NetFault } from '#shared/contract/reading-net-check.ts';
-import { plainText } from '#shared/text/number-text.ts';
 
 /** Where a poor cell or angle lies, by the heads that the lines beside it carry on the sheet. */
 export function faultPlace(

@@ -1,4 +1,4 @@
-import { exponentText, plainText, powerParts } from '#shared/text/number-text.ts';
+import { exponentText, plainText, powerParts } from '#client/lib/figures.ts';
 import type { Run } from './runs.tsx';
 
 /** "2 × 10⁻⁷" with the power to be raised; the plain figure where a power of ten would only be in the way. */

@@ -1,3 +1,4 @@
+import { sentenceText } from '#client/lib/figures.ts';
 import { findingsText as text } from '#client/text/desk-forms.ts';
 import type { Finding } from '#shared/contract/reading.ts';
 
@@ -22,7 +23,7 @@ export function FindingsList({
       {findings.map((found) => (
         <li key={keyOf(found)} className="border-b border-rule-2 py-1.5 last:border-b-0">
           <b className={`font-semibold ${COLOURS[found.weight]}`}>{text.weights[found.weight]}.</b>{' '}
-          {found.text}
+          {sentenceText(found.text)}
           {found.at || found.entityIds.length > 0 ? (
             <button type="button" className="touch ml-2 text-sm underline" onClick={() => onShow(found)}>
               {text.show}

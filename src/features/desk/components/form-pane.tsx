@@ -1,4 +1,5 @@
 import { type ReactNode, useEffect, useRef } from 'react';
+import { sentenceText } from '#client/lib/figures.ts';
 import { formText } from '#client/text/desk-forms.ts';
 import type { Finding } from '#shared/contract/reading.ts';
 
@@ -56,7 +57,7 @@ export function FormFindings({ findings }: { findings: readonly Finding[] }) {
           key={`${found.code} ${found.entityIds.join(' ')} ${found.text}`}
           className={COLOURS[found.weight]}
         >
-          {found.text}
+          {sentenceText(found.text)}
         </li>
       ))}
     </ul>

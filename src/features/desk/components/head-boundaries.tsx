@@ -1,8 +1,8 @@
 import { Button } from '#client/components/button.tsx';
 import type { BoundaryKind } from '#client/features/desk/model/tool-choice.ts';
+import { fixedText } from '#client/lib/figures.ts';
 import { formText, lineText, waterText as text } from '#client/text/desk-forms.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 
 type Line = { id: string; value: TracedLine };
 type TraceChoice = keyof typeof text.trace;

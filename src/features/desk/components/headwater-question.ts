@@ -1,6 +1,6 @@
+import { fixedText } from '#client/lib/figures.ts';
 import { waterText as text } from '#client/text/desk-forms.ts';
 import type { EntityOf, UnitSystem } from '#shared/contract/document.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
 /** A flood stands above the full supply level too, but seldom by more than this, in the unit of the document. */

@@ -1,7 +1,7 @@
+import { fixedText, plusMinusText } from '#client/lib/figures.ts';
 import { exitsText } from '#client/text/exits.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { HeaveReading } from '#shared/contract/reading-quantities.ts';
-import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { DECIMALS, unitNames } from '#shared/text/unit-text.ts';
 import { lineNameOf } from './line-names.ts';
 import { PlainTable } from './plain-table.tsx';

@@ -1,11 +1,11 @@
 import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
 import { CheckField } from '#client/components/field.tsx';
+import { fixedText, sentenceText, signedText } from '#client/lib/figures.ts';
 import { independentText as text } from '#client/text/independent.ts';
 import type { DifferencePicture } from '#shared/compute/beside/difference-picture.ts';
 import { STEPS } from '#shared/compute/beside/difference-steps.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
-import { fixedText, signedText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import type { DeskChecks, IndependentResult, IndependentState } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
@@ -70,7 +70,7 @@ function Progress({
       {state.state === 'failed' ? (
         <div role="alert" className="bg-doubt p-2">
           <p className="m-0 text-wrong">
-            <b className="font-semibold">{text.failed}</b> {state.text}
+            <b className="font-semibold">{text.failed}</b> {sentenceText(state.text)}
           </p>
           <PlaceButton at={state.at} onPlace={onPlace} />
         </div>

@@ -1,3 +1,4 @@
+import { fixedText, NO_FIGURE, signedText } from '#client/lib/figures.ts';
 import { deskToolText } from '#client/text/desk-tools.ts';
 import { independentText as text } from '#client/text/independent.ts';
 import type { SteepestExit } from '#shared/compute/beside/beside-solution.ts';
@@ -6,7 +7,6 @@ import type {
   IndependentComparison,
 } from '#shared/compute/independent/compare-with-independent.ts';
 import type { FlowNetDocument, SheetPoint, UnitSystem } from '#shared/contract/document.ts';
-import { fixedText, NO_FIGURE, signedText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import { powerRuns } from './figure-runs.ts';
 import { Aside } from './margin-section.tsx';

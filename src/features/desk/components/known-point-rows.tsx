@@ -1,8 +1,8 @@
 import { useEffect, useRef } from 'react';
+import { signedText } from '#client/lib/figures.ts';
 import { formText, setOutText as text } from '#client/text/desk-forms.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { signedText } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure, Words } from './form-fields.tsx';

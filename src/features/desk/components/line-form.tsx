@@ -1,9 +1,9 @@
 import { useState } from 'react';
 import { Button } from '#client/components/button.tsx';
+import { fixedText, plainText } from '#client/lib/figures.ts';
 import { lineText as text, waterText } from '#client/text/desk-forms.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { fixedText, plainText } from '#shared/text/number-text.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure, NeededFigure, Words } from './form-fields.tsx';

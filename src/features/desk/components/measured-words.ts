@@ -1,7 +1,7 @@
+import { fixedText, signedText } from '#client/lib/figures.ts';
 import { measuredText as text } from '#client/text/measured.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
 import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
-import { fixedText, signedText } from '#shared/text/number-text.ts';
 import { DECIMALS } from '#shared/text/unit-text.ts';
 
 export type MeasuredState = 'none' | 'within' | 'adverse' | 'low' | 'wet';

@@ -1,11 +1,11 @@
 import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
 import { CheckField } from '#client/components/field.tsx';
+import { fixedText, sentenceText } from '#client/lib/figures.ts';
 import { netCheckText as text } from '#client/text/net-check.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
 import type { Finding, NetReading } from '#shared/contract/reading.ts';
 import type { NetCheckReading, NetFault } from '#shared/contract/reading-net-check.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { faultKey } from '../model/check-guides.ts';
 import type { DeskChecks } from '../model/desk-checks.ts';
@@ -82,7 +82,7 @@ function Drawing({ reading, check, store, checks, onSheet }: DrawingProps) {
   return (
     <>
       <MarginSection title={text.drawing}>
-        <p className="m-0">{summary.text}.</p>
+        <p className="m-0">{sentenceText(summary.text)}.</p>
         <Aside>
           {text.counts(summary.cellsJudged, summary.cellsPoor, summary.anglesJudged, summary.anglesPoor)}
         </Aside>
@@ -140,7 +140,7 @@ function Fault({
         onClick={onChoose}
       >
         <span>
-          {fault.text}
+          {sentenceText(fault.text)}
           <span className="block text-sm font-normal text-ink-2">{place}</span>
         </span>
         <span className="text-right whitespace-nowrap text-ink-2">

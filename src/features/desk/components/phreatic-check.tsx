@@ -1,7 +1,7 @@
+import { fixedText, signedText } from '#client/lib/figures.ts';
 import { phreaticText as text } from '#client/text/phreatic.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { PhreaticEnd, PhreaticReading } from '#shared/contract/reading-phreatic.ts';
-import { fixedText, signedText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import { Aside, MarginSection } from './margin-section.tsx';
 import { FigureCell, MarginTable, RowHead } from './margin-table.tsx';

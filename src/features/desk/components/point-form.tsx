@@ -1,6 +1,7 @@
 import { type FormEvent, useState } from 'react';
 import { Button } from '#client/components/button.tsx';
 import { NumberField, TextField } from '#client/components/field.tsx';
+import { numberFault } from '#client/lib/number-fault.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { pointFormText as text } from '#client/text/desk-forms.ts';
 import { scheduleText, typedNumberText } from '#client/text/schedule.ts';
@@ -72,7 +73,7 @@ function faultsOf(typed: Typed): Partial<Typed> {
   if (typed.name.trim() === '') faults.name = text.nameNeeded;
   for (const name of ['offset', 'elevation'] as const) {
     if (typed[name].trim() === '') faults[name] = typedNumberText.needed;
-    else if (parseTypedNumber(typed[name]) === null) faults[name] = typedNumberText.notANumber;
+    else if (parseTypedNumber(typed[name]) === null) faults[name] = numberFault(typed[name]);
   }
   return faults;
 }

@@ -1,6 +1,7 @@
 import { type FormEvent, useState } from 'react';
 import { Button } from '#client/components/button.tsx';
 import { NumberField, TextArea } from '#client/components/field.tsx';
+import { numberFault } from '#client/lib/number-fault.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { profileText as text } from '#client/text/profiles.ts';
 import { typedNumberText } from '#client/text/schedule.ts';
@@ -134,7 +135,7 @@ function gridFaults(typed: Record<GridField, string>): Partial<Record<GridField,
   for (const field of FIELDS) {
     const parsed = parseTypedNumber(typed[field]);
     if (typed[field].trim() === '') faults[field] = typedNumberText.needed;
-    else if (parsed === null) faults[field] = typedNumberText.notANumber;
+    else if (parsed === null) faults[field] = numberFault(typed[field]);
     else if (Math.abs(parsed) > MAX_FIGURE) faults[field] = typedNumberText.tooLarge;
   }
   const same = (a: GridField, b: GridField) => parseTypedNumber(typed[a]) === parseTypedNumber(typed[b]);

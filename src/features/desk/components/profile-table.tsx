@@ -1,8 +1,8 @@
 import { classNames } from '#client/components/class-names.ts';
+import { fixedText, plusMinusText } from '#client/lib/figures.ts';
 import { profileText as text } from '#client/text/profiles.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { ProfileReading, ProfileSample } from '#shared/contract/reading-quantities.ts';
-import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
 const CELL = 'border-b border-rule-2 px-2 py-[3px] whitespace-nowrap';

@@ -3,6 +3,7 @@ import { useStore } from 'zustand';
 import { useNotice } from '#client/components/notice.tsx';
 import { copyText } from '#client/lib/copy-text.ts';
 import { downloadText } from '#client/lib/download.ts';
+import { sentenceText } from '#client/lib/figures.ts';
 import { profileText as text } from '#client/text/profiles.ts';
 import { scheduleText } from '#client/text/schedule.ts';
 import { entitiesOf } from '#shared/contract/document.ts';
@@ -68,7 +69,7 @@ export function ProfilesPane({ store, views, netName, onForm, onSheet }: Profile
           />
           <div className={stale ? 'opacity-60' : ''}>
             {read?.remark ? (
-              <p className="m-0 bg-doubt px-2.5 py-1.5 text-attention">{read.remark.text}</p>
+              <p className="m-0 bg-doubt px-2.5 py-1.5 text-attention">{sentenceText(read.remark.text)}</p>
             ) : null}
             {read?.uplift ? <UpliftTable uplift={read.uplift} unitSystem={document.unitSystem} /> : null}
             {read && read.samples.length > 0 ? <ProfileTable document={document} read={read} /> : null}

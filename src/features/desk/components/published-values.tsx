@@ -1,10 +1,10 @@
+import { plainText } from '#client/lib/figures.ts';
 import { exitsText } from '#client/text/exits.ts';
 import {
   PUBLISHED_VALUES,
   type PublishedValue,
   publishedValues,
 } from '#shared/compute/quantities/published-values.ts';
-import { plainText } from '#shared/text/number-text.ts';
 
 const text = exitsText.published;
 const ABOUT = [...new Set(PUBLISHED_VALUES.map(({ about }) => about))];

@@ -1,9 +1,9 @@
 import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
+import { fixedText, sentenceText, signedText } from '#client/lib/figures.ts';
 import { explanationText as text } from '#client/text/explanation.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
-import { fixedText, signedText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import type { DeskChecks, WaysState } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
@@ -86,7 +86,7 @@ function Explanation({ point }: { point: PointReading }) {
   return (
     <MarginSection title={text.result}>
       {point.status === 'withheld' ? <p className="m-0 text-attention">{text.notRead}</p> : null}
-      <p className="m-0">{point.explanation}</p>
+      <p className="m-0">{sentenceText(point.explanation)}</p>
       {remark && remark !== point.explanation ? <p className="m-0 text-attention">{remark}</p> : null}
     </MarginSection>
   );

@@ -3,6 +3,7 @@ import { useStore } from 'zustand';
 import { buttonClass } from '#client/components/button.tsx';
 import { useNotice } from '#client/components/notice.tsx';
 import { copyText } from '#client/lib/copy-text.ts';
+import { sentenceText } from '#client/lib/figures.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
@@ -96,7 +97,7 @@ export function ScheduleState({ reading, failed }: { reading: NetReading | null;
   const [first] = reading.findings.filter((found) => found.weight === 'wrong' || found.weight === 'missing');
   return (
     <p className="sticky left-0 m-0 bg-doubt px-2.5 py-1.5 text-attention">
-      <b className="font-semibold">{text.unfinished}.</b> {first?.text}
+      <b className="font-semibold">{text.unfinished}.</b> {sentenceText(first?.text ?? '')}
     </p>
   );
 }

@@ -1,9 +1,9 @@
+import { enteredText, fixedText, NO_FIGURE, sentenceText } from '#client/lib/figures.ts';
 import { measuredText } from '#client/text/measured.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading, PointReading } from '#shared/contract/reading.ts';
 import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
 export type SortColumn =
@@ -107,12 +107,12 @@ const plusMinus = (value: number | null, decimals: number) =>
 /** Why a point has no figure, or what has to be known about the one it has; empty when there is nothing to say. */
 export function pointRemark(point: PointReading): string {
   const own = point.status === 'abovePhreatic' ? text.abovePhreatic : (point.reason?.text ?? '');
-  return [own, ...point.findings.map((found) => found.text)].filter(Boolean).join(' ');
+  return sentenceText([own, ...point.findings.map((found) => found.text)].filter(Boolean).join(' '));
 }
 
 /** The line above the table: datum, γw and what the ± is. */
 export function scheduleLead(document: Units, reading: NetReading | null): string {
   const gammaW = reading?.quantities.gammaW ?? null;
   const unit = unitNames(document.unitSystem).unitWeight;
-  return text.lead(document.datum, gammaW === null ? '–' : String(gammaW), unit);
+  return text.lead(document.datum, gammaW === null ? NO_FIGURE : enteredText(gammaW), unit);
 }

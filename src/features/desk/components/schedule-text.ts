@@ -1,7 +1,7 @@
+import { enteredText, MINUS } from '#client/lib/figures.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
 import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
-import { MINUS } from '#shared/text/number-text.ts';
 import { measuredFigures } from './measured-words.ts';
 import { pointFigures, pointRemark, type Sort, scheduleColumns, sortedPoints } from './schedule-rows.ts';
 
@@ -9,8 +9,9 @@ import { pointFigures, pointRemark, type Sort, scheduleColumns, sortedPoints } f
 const FORMULA_START = /^[\s\p{Cc}]*[=+\-@＝＋－＠|]/u;
 
 /**
- * The schedule as it stands on the screen, in the order shown there, tabs between columns, for pasting into a spreadsheet: minus signs as
- * spreadsheets read them, the ± in columns of their own, so that every figure arrives as a number.
+ * The schedule as it stands on the screen, in the order shown there, tabs between columns, for pasting into a
+ * spreadsheet: minus signs as spreadsheets read them, decimals with the person's own mark, as their spreadsheet has
+ * it, the ± in columns of their own, so that every figure arrives as a number.
  */
 export function scheduleTsv(
   document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
@@ -84,7 +85,7 @@ function rowOf(point: PointReading, document: Pick<FlowNetDocument, 'unitSystem'
 /** Rows as text for pasting into a spreadsheet, tabs between the columns; what would run as a formula is guarded. */
 export function tableTsv(rows: ReadonlyArray<ReadonlyArray<string | number | null>>): string {
   const cell = (held: string | number | null) =>
-    typeof held === 'string' ? cellText(guarded(held)) : held === null ? '' : String(held);
+    typeof held === 'string' ? cellText(guarded(held)) : enteredText(held).replace(MINUS, '-');
   return rows.map((row) => row.map(cell).join('\t')).join('\n');
 }
 

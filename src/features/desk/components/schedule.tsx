@@ -1,5 +1,6 @@
 import { Fragment, useState } from 'react';
 import { classNames } from '#client/components/class-names.ts';
+import { sentenceText } from '#client/lib/figures.ts';
 import { explanationText } from '#client/text/explanation.ts';
 import { measuredText } from '#client/text/measured.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
@@ -156,7 +157,7 @@ function Explanation({
   return (
     <tr>
       <td colSpan={span} className="border-b border-rule-2 bg-hover px-4 py-2">
-        {point.explanation ? <p className="m-0 max-w-[80ch]">{point.explanation}</p> : null}
+        {point.explanation ? <p className="m-0 max-w-[80ch]">{sentenceText(point.explanation)}</p> : null}
         {remark && remark !== point.explanation ? (
           <p className="m-0 max-w-[80ch] text-attention">{remark}</p>
         ) : null}

@@ -1,6 +1,6 @@
+import { fixedText } from '#client/lib/figures.ts';
 import { explanationText as text } from '#client/text/explanation.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { DoubtSharesList } from './doubt-shares.tsx';
 import type { MarginForm } from './margin-form.tsx';
 import { MarginSection } from './margin-section.tsx';

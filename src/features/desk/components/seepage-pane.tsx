@@ -1,11 +1,11 @@
 import type { ReactNode } from 'react';
 import { useStore } from 'zustand';
+import { fixedText, NO_FIGURE, plainText } from '#client/lib/figures.ts';
 import { explanationText as text } from '#client/text/explanation.ts';
 import { flowIn } from '#shared/compute/quantities/seepage-volume.ts';
 import { permeabilityPerSecond } from '#shared/compute/units.ts';
 import { type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { fixedText, NO_FIGURE, plainText } from '#shared/text/number-text.ts';
 import { DECIMALS, unitNames } from '#shared/text/unit-text.ts';
 import { flowUnitChoice, ownFlowUnit } from '../model/flow-unit.ts';
 import type { DeskFormProps } from './desk-form.ts';

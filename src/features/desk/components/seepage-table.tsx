@@ -1,9 +1,9 @@
 import { useStore } from 'zustand';
+import { NO_FIGURE, plainText } from '#client/lib/figures.ts';
 import { exitsText } from '#client/text/exits.ts';
 import { flowIn } from '#shared/compute/quantities/seepage-volume.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { NO_FIGURE, plainText } from '#shared/text/number-text.ts';
 import { flowUnitChoice, ownFlowUnit } from '../model/flow-unit.ts';
 import { powerRuns } from './figure-runs.ts';
 import { FlowUnitField } from './flow-unit-field.tsx';

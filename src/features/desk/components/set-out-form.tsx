@@ -1,8 +1,8 @@
 import { Button } from '#client/components/button.tsx';
+import { fixedText, plainText, signedText } from '#client/lib/figures.ts';
 import { setOutText as text } from '#client/text/desk-forms.ts';
 import { type EntityOf, entitiesOf, singleOf } from '#shared/contract/document.ts';
 import type { SetOutReading } from '#shared/contract/reading.ts';
-import { fixedText, plainText, signedText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure } from './form-fields.tsx';

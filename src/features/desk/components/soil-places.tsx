@@ -1,13 +1,13 @@
 import { type FormEvent, useState } from 'react';
 import { Button } from '#client/components/button.tsx';
 import { NumberField } from '#client/components/field.tsx';
+import { fixedText } from '#client/lib/figures.ts';
+import { numberFault } from '#client/lib/number-fault.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { formText, soilText as text } from '#client/text/desk-forms.ts';
-import { typedNumberText } from '#client/text/schedule.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { addPlace, removePlace } from './soil-edits.ts';
@@ -87,7 +87,7 @@ function TypedPlace({ soilId, soil, document, run }: SoilPlacesProps) {
     <NumberField
       label={label}
       value={typed[name]}
-      error={wrong && value === null ? typedNumberText.notANumber : null}
+      error={wrong && value === null ? numberFault(typed[name]) : null}
       onChange={(event) => setTyped({ ...typed, [name]: event.target.value })}
     />
   );

@@ -1,10 +1,10 @@
+import { fixedText, plainText } from '#client/lib/figures.ts';
 import { shortName } from '#client/lib/initials.ts';
 import { titleBlockText as text } from '#client/text/title-block.ts';
 import { type FlowUnit, flowIn } from '#shared/compute/quantities/seepage-volume.ts';
 import { entitiesOf, type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { NetSummary } from '#shared/contract/drawings.ts';
 import type { Finding, NetReading, TitleBlockCell } from '#shared/contract/reading.ts';
-import { fixedText, plainText } from '#shared/text/number-text.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import { ownFlowUnit } from '../model/flow-unit.ts';
 import { figuresEntered, powerRuns } from './figure-runs.ts';

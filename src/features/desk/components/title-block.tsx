@@ -1,4 +1,5 @@
 import { classNames } from '#client/components/class-names.ts';
+import { sentenceText } from '#client/lib/figures.ts';
 import { titleBlockText as text } from '#client/text/title-block.ts';
 import { Runs } from './runs.tsx';
 import type { CellId, TitleCell } from './title-block-cells.ts';
@@ -81,7 +82,7 @@ function Cell({ cell, open, onStep }: { cell: TitleCell; open: boolean; onStep: 
 }
 
 function titleOf(cell: TitleCell): string {
-  return [...cell.findings.map((found) => found.text), text.step[cell.id]].join('\n');
+  return [...cell.findings.map((found) => sentenceText(found.text)), text.step[cell.id]].join('\n');
 }
 
 const FACT_COLOURS = { ok: '', question: 'text-attention', missing: 'text-attention', wrong: 'text-wrong' };

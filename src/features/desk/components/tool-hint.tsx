@@ -1,8 +1,8 @@
 import { useStore } from 'zustand';
+import { fixedText, plainText } from '#client/lib/figures.ts';
 import { deskPaletteText as text } from '#client/text/desk-palette.ts';
 import { deskToolText } from '#client/text/desk-tools.ts';
 import { profileText } from '#client/text/profiles.ts';
-import { fixedText, plainText } from '#shared/text/number-text.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 

@@ -1,7 +1,7 @@
+import { fixedText, plusMinusText } from '#client/lib/figures.ts';
 import { profileText } from '#client/text/profiles.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
 import type { ProfileReading } from '#shared/contract/reading-quantities.ts';
-import { fixedText, plusMinusText } from '#shared/text/number-text.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { FigureCell, MarginTable, RowHead } from './margin-table.tsx';
 

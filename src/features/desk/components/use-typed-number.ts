@@ -1,8 +1,9 @@
 import { useState } from 'react';
+import { enteredText as asEntered } from '#client/lib/figures.ts';
+import { numberFault } from '#client/lib/number-fault.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { typedNumberText as text } from '#client/text/schedule.ts';
 import { MAX_FIGURE } from '#shared/contract/limits.ts';
-import { MINUS } from '#shared/text/number-text.ts';
 
 interface TypedNumber {
   value: number | null;
@@ -19,9 +20,6 @@ interface TypedNumber {
   /** How the value is shown while nobody types; the figure as entered by default. */
   shown?: string;
 }
-
-/** The figure as it was entered, with a proper minus sign. */
-const asEntered = (value: number | null) => (value === null ? '' : String(value).replace('-', MINUS));
 
 /**
  * A figure being typed: what is typed stays as typed until it can be taken, and what cannot be taken stays with the
@@ -54,7 +52,7 @@ export function useTypedNumber({
   function parse(entered: string): { parsed: number | null; fault: string | null } {
     if (entered.trim() === '') return { parsed: null, fault: optional ? null : text.needed };
     const parsed = parseTypedNumber(entered);
-    if (parsed === null) return { parsed, fault: text.notANumber };
+    if (parsed === null) return { parsed, fault: numberFault(entered) };
     if (Math.abs(parsed) > most) return { parsed, fault: text.tooLarge };
     if (within && (parsed < within.least || parsed > within.greatest)) return { parsed, fault: within.fault };
     if (positive && parsed <= 0) return { parsed, fault: text.mustBePositive };

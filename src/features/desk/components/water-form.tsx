@@ -1,8 +1,8 @@
 import { Button } from '#client/components/button.tsx';
 import type { BoundaryKind } from '#client/features/desk/model/tool-choice.ts';
+import { fixedText } from '#client/lib/figures.ts';
 import { formText, waterText as text } from '#client/text/desk-forms.ts';
 import { type EntityOf, entitiesOf, singleOf } from '#shared/contract/document.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Figure, NeededFigure, Words } from './form-fields.tsx';

@@ -1,3 +1,4 @@
+import { fixedText, plainText } from '#client/lib/figures.ts';
 import { soilText } from '#client/text/desk-forms.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
 import type { LinearMap } from '#shared/compute/linear-map.ts';
@@ -10,7 +11,6 @@ import {
   type TracedLine,
 } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { fixedText, plainText } from '#shared/text/number-text.ts';
 import type { HideableKind } from '../model/desk-state.ts';
 import type { GuidesByOwner } from '../model/guides.ts';
 import type { Selection } from '../model/selection.ts';
@@ -157,7 +157,7 @@ function headText(id: string, input: SceneInput): string | null {
 }
 
 function withoutTrailingZeros(text: string): string {
-  return text.replace(/\.?0+$/, '');
+  return text.replace(/[.,]?0+$/, '');
 }
 
 function pointItem({ id, value }: Shown, input: SceneInput): SceneMark[] {

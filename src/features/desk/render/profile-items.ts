@@ -1,10 +1,10 @@
+import { fixedText } from '#client/lib/figures.ts';
 import { profileText as text } from '#client/text/profiles.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { ProfileReading } from '#shared/contract/reading-quantities.ts';
-import { fixedText } from '#shared/text/number-text.ts';
 import { DECIMALS, unitNames } from '#shared/text/unit-text.ts';
 import { type ProfileDiagram, profileDiagram } from '../model/profile-diagram.ts';
 import type { Profile } from '../model/profile-edits.ts';

@@ -44,7 +44,7 @@ describe('two versions of one thing', () => {
     const soil = { kind: 'soil' as const, name: 'Core', ...UNSAID.soil, k: null, unit: 'm/s' as const };
     const held = { ...soil, factor: null, source: '', places: [] };
     expect(conflictFacts({ ...held, kv: 1e-9 }, { ...held, places: [[1, 2]] })).toEqual([
-      { name: 'Permeability across the bedding', mine: '1e-9', theirs: '–' },
+      { name: 'Permeability across the bedding', mine: '1e−9', theirs: '–' },
       { name: 'Places', mine: '–', theirs: '1.0, 2.0 px' },
     ]);
   });
