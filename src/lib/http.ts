@@ -17,6 +17,10 @@ interface CallOptions {
   signal?: AbortSignal | undefined;
   /** Statuses besides 2xx whose body is the reply all the same, such as 409 of a batch of commands. */
   alsoAccept?: readonly number[];
+  /** What nobody waits for and may fail: an ended session is not made known by it. */
+  unasked?: boolean;
+  /** Goes out even when the page is closed meanwhile. */
+  keepalive?: boolean;
 }
 
 /** The address of an API path below /api/v1, with the query members that have a value. */
@@ -32,7 +36,7 @@ export function apiUrl(path: string, query: Query = {}): string {
 export async function getJson<S extends Schema>(
   path: string,
   reply: S,
-  options: Pick<CallOptions, 'query' | 'signal'> = {},
+  options: Pick<CallOptions, 'query' | 'signal' | 'unasked'> = {},
 ): Promise<z.output<S>> {
   return parseReply(await call('GET', path, options), reply);
 }
@@ -59,21 +63,31 @@ async function call(method: 'GET' | Method, path: string, options: CallOptions):
   if (refused.code === 'csrf' && (await renewToken())) {
     const second = await fetchOnce(method, path, options);
     if (isAccepted(second, options)) return second;
-    throw announced(await problemOf(second));
+    throw announced(await problemOf(second), options);
   }
-  throw announced(refused);
+  throw announced(refused, options);
 }
 
 const isAccepted = (response: Response, options: CallOptions) =>
   response.ok || (options.alsoAccept?.includes(response.status) ?? false);
 
-async function fetchOnce(method: string, path: string, { query, body, signal }: CallOptions) {
+async function fetchOnce(
+  method: string,
+  path: string,
+  { query, body, signal, keepalive = false }: CallOptions,
+) {
   const headers: Record<string, string> = { Accept: 'application/json' };
   if (method !== 'GET') headers['X-CSRF-Token'] = currentCsrfToken();
   if (body !== undefined) headers['Content-Type'] = 'application/json';
   const sent = body === undefined ? null : JSON.stringify(body);
   try {
-    return await fetch(apiUrl(path, query), { method, headers, body: sent, signal: signal ?? null });
+    return await fetch(apiUrl(path, query), {
+      method,
+      headers,
+      body: sent,
+      keepalive,
+      signal: signal ?? null,
+    });
   } catch (cause) {
     if (signal?.aborted) throw cause;
     throw noConnection(cause);
@@ -132,8 +146,8 @@ export function noConnection(cause?: unknown): ApiProblem {
   );
 }
 
-function announced(refused: ApiProblem): ApiProblem {
-  if (refused.code === 'not-signed-in') announce('signedOut');
+function announced(refused: ApiProblem, { unasked = false }: CallOptions): ApiProblem {
+  if (refused.code === 'not-signed-in' && !unasked) announce('signedOut');
   return refused;
 }
 

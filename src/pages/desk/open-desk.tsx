@@ -7,6 +7,7 @@ import { ChosenLineBar } from '#client/features/desk/components/chosen-line-bar.
 import { ConflictDialog } from '#client/features/desk/components/conflict-dialog.tsx';
 import { FiguresPane } from '#client/features/desk/components/figures-pane.tsx';
 import { MarginFormPane } from '#client/features/desk/components/margin-form.tsx';
+import { PresenceLine } from '#client/features/desk/components/presence-line.tsx';
 import { ReadOnlyLine } from '#client/features/desk/components/read-only-line.tsx';
 import { SavingLine } from '#client/features/desk/components/saving-line.tsx';
 import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
@@ -15,6 +16,7 @@ import { ToolPalette } from '#client/features/desk/components/tool-palette.tsx';
 import { useDeskChecks } from '#client/features/desk/components/use-desk-checks.ts';
 import { useSavingMoments } from '#client/features/desk/components/use-saving-moments.ts';
 import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
+import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { downloadFrom } from '#client/lib/download.ts';
 import { apiUrl } from '#client/lib/http.ts';
 import { paths } from '#client/lib/paths.ts';
@@ -32,6 +34,7 @@ import { RevisionsPane } from './revisions-pane.tsx';
 import { SendForChecking } from './send-for-checking.tsx';
 import { useDeskLive } from './use-desk-live.ts';
 import { useDeskNotes } from './use-desk-notes.ts';
+import { useDeskPresence } from './use-desk-presence.ts';
 import { useMargin } from './use-margin.ts';
 
 /** Below this the parts of the desk do not fit side by side; the same measure as the styles' `md`. */
@@ -57,6 +60,8 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
   const checks = useDeskChecks(store);
   const notice = useNotice();
   const flush = async () => saving?.flush();
+  const presence = useDeskPresence(netId, store);
+  const { person } = useSession();
   useDeskLive(netId, session);
   useSavingMoments(saving);
 
@@ -79,6 +84,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
         ]}
         end={
           <>
+            {presence ? <PresenceLine presence={presence} store={store} ownId={person?.id ?? null} /> : null}
             {saving ? (
               <SavingLine saving={saving} store={store} onCompare={() => setDialog('compare')} />
             ) : null}

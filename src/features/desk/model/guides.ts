@@ -17,7 +17,8 @@ export type GuideTone =
   | 'above3'
   | 'below1'
   | 'below2'
-  | 'below3';
+  | 'below3'
+  | 'otherHand';
 
 /** Ground tinted in one tone: closed outlines in base-raster pixels. */
 export type GuideArea = {
@@ -48,7 +49,7 @@ export type Guides = {
 };
 
 /** Whose guides they are; each shows and takes away its own. */
-export const GUIDE_OWNERS = ['explanation', 'netCheck', 'computedNet', 'differences'] as const;
+export const GUIDE_OWNERS = ['explanation', 'netCheck', 'computedNet', 'differences', 'presence'] as const;
 export type GuideOwner = (typeof GUIDE_OWNERS)[number];
 
 export type GuidesByOwner = Readonly<Partial<Record<GuideOwner, Guides>>>;

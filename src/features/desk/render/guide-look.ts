@@ -2,6 +2,8 @@ import type { GuideTone } from '../model/guides.ts';
 import { COLOURS, type LineLook } from './line-look.ts';
 
 const WRONG = '#a3261d';
+/** Let through by half, so that the scan under it is still read. */
+const OTHER_HAND = 'rgba(91, 83, 70, 0.34)';
 
 /** Colours of the tones. Above and below are told apart by a sign in words too, at the greatest of each. */
 const TONE_COLOURS: Record<GuideTone, string> = {
@@ -21,6 +23,7 @@ const TONE_COLOURS: Record<GuideTone, string> = {
   below1: COLOURS.phreatic,
   below2: COLOURS.phreatic,
   below3: COLOURS.phreatic,
+  otherHand: COLOURS.boundary,
 };
 
 const AREA_ALPHAS: Partial<Record<GuideTone, number>> = {
@@ -54,5 +57,7 @@ export function toneColour(tone: GuideTone): string {
 export function guideLineLook(tone: GuideTone): LineLook {
   const colour = TONE_COLOURS[tone];
   if (tone === 'way') return { colour, widthPx: 2.2, dashPx: [], end: 'dot', hatchPx: 0 };
+  // A broad soft band under the line that somebody else has in hand.
+  if (tone === 'otherHand') return { colour: OTHER_HAND, widthPx: 9, dashPx: [], end: 'none', hatchPx: 0 };
   return { colour, widthPx: 1.1, dashPx: [5, 4], end: 'none', hatchPx: 0 };
 }
