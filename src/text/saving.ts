@@ -28,6 +28,9 @@ const en = {
   removed: 'removed',
   keepTheirs: (name: string | null) => (name ? `Keep the version of ${name}` : 'Keep the other version'),
   putMine: 'Put mine on top',
+  keepBoth: 'Keep both, mine as a copy',
+  keptAsCopy: 'kept my version as a copy',
+  copyOf: (name: string) => `${name.slice(0, 110)} (copy)`,
   allSettled: 'Everything is settled.',
   elsewhere:
     'This net is open in another tab of this browser, and only one tab can write. This tab follows what the other one does.',

@@ -5,10 +5,13 @@ import { Cell, HeadCell, Table } from '#client/components/table.tsx';
 import { shortName } from '#client/lib/initials.ts';
 import { commonText } from '#client/text/common.ts';
 import { savingText as text } from '#client/text/saving.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import { canKeepBoth } from '../model/conflict-copy.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import type { Conflict } from '../model/shared-edits.ts';
-import type { Saving } from '../saving/saving.ts';
+import type { ConflictChoice, Saving } from '../saving/saving.ts';
 import { conflictFacts } from './conflict-facts.ts';
+import { ConflictPicture } from './conflict-picture.tsx';
 
 interface ConflictDialogProps {
   store: DeskStore;
@@ -19,13 +22,18 @@ interface ConflictDialogProps {
 /** Both versions of everything two people changed at the same time, for the person to choose. */
 export function ConflictDialog({ store, saving, onClose }: ConflictDialogProps) {
   const conflicts = Object.values(useStore(store, (state) => state.conflicts));
+  const document = useStore(store, (state) => state.document);
   return (
     <Dialog title={text.compareTitle} onClose={onClose} wide>
       <p className="mt-0 mb-3 text-ink-2">{conflicts.length === 0 ? text.allSettled : text.compareLead}</p>
       <ul className="m-0 flex list-none flex-col gap-4 p-0">
         {conflicts.map((conflict) => (
           <li key={conflict.entityId}>
-            <Versions conflict={conflict} onKeep={(keep) => saving.settle(conflict.entityId, keep)} />
+            <Versions
+              conflict={conflict}
+              document={document}
+              onKeep={(keep) => saving.settle(conflict.entityId, keep)}
+            />
           </li>
         ))}
       </ul>
@@ -36,11 +44,20 @@ export function ConflictDialog({ store, saving, onClose }: ConflictDialogProps) 
   );
 }
 
-function Versions({ conflict, onKeep }: { conflict: Conflict; onKeep: (keep: 'mine' | 'theirs') => void }) {
+function Versions({
+  conflict,
+  document,
+  onKeep,
+}: {
+  conflict: Conflict;
+  document: FlowNetDocument;
+  onKeep: (keep: ConflictChoice) => void;
+}) {
   const name = conflict.changedBy ? shortName(conflict.changedBy.name) : null;
   const thing = text.things[(conflict.mine ?? conflict.theirs)?.kind ?? 'line'];
   return (
     <section aria-label={thing} className="border border-rule">
+      <ConflictPicture conflict={conflict} document={document} />
       <Table caption={thing}>
         <thead>
           <tr>
@@ -62,6 +79,7 @@ function Versions({ conflict, onKeep }: { conflict: Conflict; onKeep: (keep: 'mi
       <div className="flex flex-wrap gap-2 p-2">
         <Button onClick={() => onKeep('theirs')}>{text.keepTheirs(name)}</Button>
         <Button onClick={() => onKeep('mine')}>{text.putMine}</Button>
+        {canKeepBoth(conflict) ? <Button onClick={() => onKeep('both')}>{text.keepBoth}</Button> : null}
       </div>
     </section>
   );

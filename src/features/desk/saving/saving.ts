@@ -1,4 +1,5 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
+import { keepAsCopy } from '#client/features/desk/model/conflict-copy.ts';
 import type { DeskCommand, DeskStore } from '#client/features/desk/model/desk-state.ts';
 import { AUTOSAVE_MS } from '#shared/contract/limits.ts';
 import type { OpOutcome } from '#shared/contract/nets.ts';
@@ -36,12 +37,15 @@ export interface SavingState extends SaveFacts {
   detail: string;
 }
 
+export type ConflictChoice = 'mine' | 'theirs' | 'both';
+
 export interface Saving {
   state: StoreApi<SavingState>;
   clientId: string;
   /** Sends now what waits, whatever the pause under way. */
   flush(): Promise<void>;
-  settle(entityId: string, keep: 'mine' | 'theirs'): void;
+  /** Settles a conflict; `both` lets the other version stand and puts this person's beside it as a thing of its own. */
+  settle(entityId: string, keep: ConflictChoice): void;
   forgetRefused(): void;
   /** Ends sending and waits until what is left is on the disk. */
   stop(): Promise<void>;
@@ -155,10 +159,12 @@ export function startSaving(deps: SavingDeps): Saving {
       timer = null;
       await pump();
     },
-    settle(entityId, keepWhich) {
+    settle(entityId, choice) {
+      const mine = desk.getState().conflicts[entityId]?.mine ?? null;
       change(settled(queue, entityId));
       // "mine" comes back as a command of the desk, based on the other one's version.
-      desk.resolveConflict(entityId, keepWhich);
+      desk.resolveConflict(entityId, choice === 'mine' ? 'mine' : 'theirs');
+      if (choice === 'both' && mine !== null) keepAsCopy(desk, mine);
     },
     forgetRefused: () => change(forgetRefused(queue)),
     async stop() {

@@ -165,6 +165,19 @@ describe('saving', () => {
     expect(saving.state.getState().conflicts).toEqual([]);
   });
 
+  it('keeps both where told so: theirs stands, mine goes out as a line of its own', async () => {
+    const server = serverHolding({ [LINE_A]: lineTo(1) });
+    const { desk, saving } = await open({ [LINE_A]: lineTo(1) }, async (batch) => server.answer(batch));
+    server.held.set(LINE_A, { version: 2, value: lineTo(9) });
+    move(desk, 2);
+    await saving.flush();
+    saving.settle(LINE_A, 'both');
+    await saving.flush();
+    expect(server.held.get(LINE_A)).toEqual({ version: 2, value: lineTo(9) });
+    expect([...server.held.values()].map(({ value }) => value)).toEqual([lineTo(9), lineTo(2)]);
+    expect(saving.state.getState()).toMatchObject({ conflicts: [], unsent: 0 });
+  });
+
   it('keeps a conflict that was not settled over a closed tab', async () => {
     const server = serverHolding({ [LINE_A]: lineTo(1) });
     const first = await open({ [LINE_A]: lineTo(1) }, async (batch) => server.answer(batch));

@@ -1,0 +1,9 @@
+/** Words of the picture of two versions. */
+export const conflictText = {
+  picture: 'Both versions, one over the other',
+  mine: 'Your version',
+  theirs: 'The other version',
+  noMine: 'You removed it',
+  noTheirs: 'Removed by the other',
+  rest: 'The rest of the net in grey.',
+} as const;
