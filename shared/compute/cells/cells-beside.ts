@@ -85,6 +85,20 @@ function meetingsOf(line: Polyline, other: Polyline, reach: number): Meeting[] {
   ];
 }
 
+type Kept = { readonly reach: number; readonly met: readonly Meeting[] };
+const kept = new WeakMap<Polyline, WeakMap<Polyline, Kept>>();
+
+/** As `meetingsOf`, of two lines that stay: asked again at every movement of the pointer, for as long as they last. */
+function keptMeetings(line: Polyline, other: Polyline, reach: number): readonly Meeting[] {
+  const ofLine = kept.get(line) ?? new WeakMap<Polyline, Kept>();
+  kept.set(line, ofLine);
+  const known = ofLine.get(other);
+  if (known?.reach === reach) return known.met;
+  const met = meetingsOf(line, other, reach);
+  ofLine.set(other, { reach, met });
+  return met;
+}
+
 function endsNear(line: Polyline, other: Polyline, reach: number): Meeting[] {
   const ends = [[firstOf(line), 0] as const, [lastOf(line), lengthOf(line)] as const];
   return ends.flatMap(([[x, y], s]) => {
@@ -145,7 +159,7 @@ function directionAt(line: Polyline, s: number): Pair {
 /** Distance along a rail at which it meets a line soonest, going from where it meets the drawn one in direction `way`. */
 function soonest(line: FamilyLine, { rail, t }: RailMeeting, way: number, reach: number): number | null {
   let best: number | null = null;
-  for (const met of meetingsOf(rail.shape, line.shape, reach)) {
+  for (const met of keptMeetings(rail.shape, line.shape, reach)) {
     const ahead = (met.s - t) * way;
     if (ahead > reach && (best === null || ahead < Math.abs(best - t))) best = met.s;
   }

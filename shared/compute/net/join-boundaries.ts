@@ -1,5 +1,4 @@
-import { firstOf, lastOf, type Polyline, polylineOf, verticesOf } from '#shared/compute/geometry/polyline.ts';
-import type { Pair } from '#shared/compute/geometry/predicates.ts';
+import { joinTouching } from '#shared/compute/geometry/join-touching.ts';
 import type { Potential } from '#shared/compute/net/potentials.ts';
 
 /**
@@ -24,19 +23,6 @@ export function joinBoundaries(potentials: readonly Potential[], reach: number):
 
 function joinedPair(a: Potential, b: Potential, reach: number): Potential | null {
   if (a.role !== b.role || a.level === null || a.level !== b.level) return null;
-  const shape = joinedShape(a.shape, b.shape, reach);
+  const shape = joinTouching(a.shape, b.shape, reach);
   return shape === null ? null : { ...a, shape, members: [...a.members, ...b.members] };
-}
-
-function joinedShape(a: Polyline, b: Polyline, reach: number): Polyline | null {
-  const ways: Array<[Pair, Pair, () => Pair[]]> = [
-    [lastOf(a), firstOf(b), () => [...verticesOf(a), ...verticesOf(b)]],
-    [lastOf(a), lastOf(b), () => [...verticesOf(a), ...verticesOf(b).reverse()]],
-    [firstOf(a), firstOf(b), () => [...verticesOf(b).reverse(), ...verticesOf(a)]],
-    [firstOf(a), lastOf(b), () => [...verticesOf(b), ...verticesOf(a)]],
-  ];
-  const nearest = ways
-    .map(([end, start, points]) => ({ gap: Math.hypot(end[0] - start[0], end[1] - start[1]), points }))
-    .sort((one, other) => one.gap - other.gap)[0]!;
-  return nearest.gap <= reach ? polylineOf(nearest.points()) : null;
 }
