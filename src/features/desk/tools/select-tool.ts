@@ -10,6 +10,7 @@ import { beginFrame, endFrame, toggleAt } from './choose-several.ts';
 import { dragTo, grabMark, grabVertex, letGo } from './drag.ts';
 import { dropChosen, grabChosen, moveChosen } from './edit-move.ts';
 import { answerEdit, removeChosen } from './edit-step.ts';
+import { chosenThings } from './edit-things.ts';
 import { withoutPoint, withPointInserted } from './line-points.ts';
 import { type Picked, pickAt, reachOf } from './pick.ts';
 import {
@@ -96,7 +97,7 @@ function opened(picked: Exclude<Picked, { kind: 'note' }>): ToolCommand[] {
 /** A double click on a segment of the chosen line puts a vertex in there. */
 function insertAt(event: Extract<ToolEvent, { type: 'click' }>, context: ToolContext): ToolStep | null {
   const chosen = chosenLine(context);
-  if (chosen === null || context.readOnly) return null;
+  if (chosen === null || context.readOnly || chosenThings(context).length === 0) return null;
   const { id, line } = chosen;
   const reach = reachOf(context);
   if (line.points.some(([x, y]) => Math.hypot(x - event.at[0], y - event.at[1]) <= reach)) return null;
@@ -123,7 +124,8 @@ function removeSelected(context: ToolContext): ToolStep {
   // A soil is no mark on the sheet: it is removed in its form, with what refers to it.
   if (context.readOnly || context.selection.kind === 'none' || context.selection.kind === 'soil')
     return rest();
-  if (context.selection.kind === 'several') return removeChosen(context);
+  if (context.selection.kind === 'several' || chosenThings(context).length === 0)
+    return removeChosen(context);
   const chosen = chosenLine(context);
   const vertex = context.selection.vertex;
   if (chosen !== null && vertex !== null && chosen.line.points.length > 2) {
