@@ -1,3 +1,4 @@
+import { fixedText } from '#client/lib/figures.ts';
 import { inLanguage } from './language.ts';
 
 /** Words around the calculation sheet. */
@@ -13,7 +14,7 @@ const en = {
   waiting: 'being made…',
   download: 'Download PDF',
   printView: 'Print view',
-  size: (byteSize: number) => `${(byteSize / 1e6).toFixed(1)} MB`,
+  size: (byteSize: number) => `${fixedText(byteSize / 1e6, 1)} MB`,
   print: 'Print',
   backToCheck: 'Back to the check',
 } as const;

@@ -12,8 +12,6 @@ const en = {
   fullSupplyHint: 'Leave it empty when it is not known.',
   gammaW: 'Unit weight of water, γw',
   gammaWHint: '9.81 kN/m³ or 62.4 lb/ft³ unless the water asks for another value.',
-  notANumber:
-    'This cannot be read as one number. Write it as 1118.25 or 1118,25, without marks between thousands.',
   gammaPositive: 'The unit weight of water must be a number above zero.',
   create: 'Make the dam',
   created: 'The dam is made.',

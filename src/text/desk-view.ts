@@ -24,7 +24,7 @@ const en = {
   zoomBar: 'Zoom',
   zoomShown: (zoom: number) => {
     const percent = zoom * 100;
-    return `${percent < 9.95 ? percent.toFixed(1) : percent.toFixed(0)} %`;
+    return `${fixedText(percent, percent < 9.95 ? 1 : 0)} %`;
   },
   pixels: (x: number, y: number) => `x ${fixedText(x, 1)}, y ${fixedText(y, 1)} px`,
   offset: (words: PointerWords) => {

@@ -1,47 +1,68 @@
+import { fixedText, plainText } from '#client/lib/figures.ts';
 import type { DrawingDto, NetSummary, RenderJobDto } from '#shared/contract/drawings.ts';
 import { inLanguage } from './language.ts';
 
 const plural = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
 const MB = 1024 * 1024;
 
+const enFacts = {
+  revision: (number: string, revision: string) => `${number} rev ${revision}`,
+  stages: { asBuilt: 'as-built', design: 'design' },
+  sheets: (count: number) => plural(count, 'sheet', 'sheets'),
+  dpi: (dpi: number) => `${Math.round(dpi)} dpi`,
+  bytes: (bytes: number) => `${bytes} bytes`,
+  kilobytes: (count: number) => `${count} kB`,
+  megabytes: (figure: string) => `${figure} MB`,
+  states: { sent: 'sent for checking', accepted: 'accepted', returned: 'returned' },
+  /** Stands behind one of the states. */
+  changedSince: ', changed since',
+  notFinished: 'not finished',
+  traced: 'traced',
+  waiting: 'Waiting to be prepared for the desk',
+  reading: 'Reading the file',
+  preparing: (page: number, of: number) => `Preparing page ${page} of ${of}`,
+} as const;
+const facts = inLanguage({ en: enFacts });
+
 /** "HF-114 rev C", or the file's name until the drawing has a number. */
 export function drawingName(drawing: Pick<DrawingDto, 'number' | 'revision' | 'fileName'>): string {
   if (!drawing.number) return drawing.fileName;
-  return drawing.revision ? `${drawing.number} rev ${drawing.revision}` : drawing.number;
+  return drawing.revision ? facts.revision(drawing.number, drawing.revision) : drawing.number;
 }
 
 /** "Cross-sections, as-built 1961. 2 sheets, 300 dpi". */
 export function drawingFacts(drawing: DrawingDto): string {
-  const stage = drawing.stage === 'asBuilt' ? 'as-built' : drawing.stage === 'design' ? 'design' : '';
-  const what = [drawing.title, [stage, drawing.drawnOn].filter(Boolean).join(' ')].filter(Boolean).join(', ');
-  const dpi = drawing.sheets[0]?.dpi;
-  const sheets = drawing.sheets.length;
-  const how = [sheets > 0 ? plural(sheets, 'sheet', 'sheets') : '', dpi ? `${Math.round(dpi)} dpi` : '']
+  const { stage } = drawing;
+  const stageWord = stage === 'asBuilt' || stage === 'design' ? facts.stages[stage] : '';
+  const what = [drawing.title, [stageWord, drawing.drawnOn].filter(Boolean).join(' ')]
     .filter(Boolean)
     .join(', ');
+  const dpi = drawing.sheets[0]?.dpi;
+  const sheets = drawing.sheets.length;
+  const how = [sheets > 0 ? facts.sheets(sheets) : '', dpi ? facts.dpi(dpi) : ''].filter(Boolean).join(', ');
   return [what, how].filter(Boolean).join('. ');
 }
 
 /** "2.4 MB"; a whole megabyte is 1,048,576 bytes, as the limit counts. */
 export function byteText(bytes: number): string {
-  if (bytes < 1024) return `${bytes} bytes`;
-  return bytes < MB ? `${Math.ceil(bytes / 1024)} kB` : `${(bytes / MB).toFixed(1)} MB`;
+  if (bytes < 1024) return facts.bytes(bytes);
+  return bytes < MB ? facts.kilobytes(Math.ceil(bytes / 1024)) : facts.megabytes(fixedText(bytes / MB, 1));
 }
 
 /** Where the work on a net stands, in a few words; what was changed since is not what was sent or decided on. */
 export function netStateText(net: NetSummary): string {
-  const label = net.revisionLabel ? ` ${net.revisionLabel}` : '';
-  const since = net.changedSinceRevision ? ', changed since' : '';
-  if (net.state === 'sent') return `sent for checking${since}`;
-  if (net.state === 'accepted') return `accepted${label}${since}`;
-  if (net.state === 'returned') return `returned${label}${since}`;
-  return net.drops === null ? 'not finished' : 'traced';
+  const since = net.changedSinceRevision ? facts.changedSince : '';
+  if (net.state === 'sent') return `${facts.states.sent}${since}`;
+  if (net.state === 'accepted' || net.state === 'returned') {
+    return `${[facts.states[net.state], net.revisionLabel].filter(Boolean).join(' ')}${since}`;
+  }
+  return net.drops === null ? facts.notFinished : facts.traced;
 }
 
 export function jobText(job: RenderJobDto): string {
-  if (job.state === 'waiting') return 'Waiting to be prepared for the desk';
-  if (job.pagesTotal === null) return 'Reading the file';
-  return `Preparing page ${Math.min(job.pagesDone + 1, job.pagesTotal)} of ${job.pagesTotal}`;
+  if (job.state === 'waiting') return facts.waiting;
+  if (job.pagesTotal === null) return facts.reading;
+  return facts.preparing(Math.min(job.pagesDone + 1, job.pagesTotal), job.pagesTotal);
 }
 
 const en = {
@@ -60,7 +81,7 @@ const en = {
   noSection: 'No section framed yet',
   needsKnownPoints: 'Known points needed',
   toScale: 'To scale, not traced',
-  dropsOf: (count: number) => `${Number(count.toFixed(2))} drops`,
+  dropsOf: (count: number) => `${plainText(count)} drops`,
   notesOpen: (count: number) => plural(count, 'note open', 'notes open'),
   notRendered: 'This file could not be used.',
   prepareAgain: 'Prepare again',

@@ -1,6 +1,7 @@
 import type { LineOp } from '#client/features/desk/model/pending-edit.ts';
 import { deskToolText } from '#client/text/desk-tools.ts';
 import type { DocumentEntity, TracedLine } from '#shared/contract/document.ts';
+import { inLanguage } from './language.ts';
 
 const counted = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
 
@@ -33,7 +34,7 @@ const aLine = (line: Line) => article(deskToolText.lineWord(line));
 const theLine = (line: Line) => `the ${deskToolText.lineWord(line)}`;
 
 /** Names of the steps taken with chosen lines, as undo and the activity list show them. */
-export const editLabels = {
+const enEditLabels = {
   split: (line: Line) => `split ${aLine(line)}`,
   join: (line: Line) => `joined two lines: ${deskToolText.lineWord(line)}`,
   trim: (line: Line) => `trimmed ${aLine(line)}`,
@@ -49,9 +50,10 @@ export const editLabels = {
   insertedVertex: (line: Line) => `put a point into ${aLine(line)}`,
   typedVertex: (line: Line, number: number) => `typed point ${number} of ${aLine(line)}`,
 } as const;
+export const editLabels = inLanguage({ en: enEditLabels });
 
 /** Why something cannot be done with chosen lines, and what to do instead. */
-export const editRefusals = {
+const enEditRefusals = {
   readOnly: 'This net can be looked at but not changed here.',
   drawing: 'A line is being drawn. Finish it with Enter first.',
   noneChosen: 'No line is chosen. Click one first.',
@@ -96,12 +98,14 @@ export const editRefusals = {
   knownPointAlone: 'A known point sets out all nets of the section, so it is chosen on its own.',
   tooManyPoints: (most: string) => `A line has at most ${most} points.`,
 } as const;
+export const editRefusals = inLanguage({ en: enEditRefusals });
 
 /** What happened to notes about a line that was changed. */
-export const editNotices = {
+const enEditNotices = {
   noteOnCutOff: 'A note about the piece cut off stays where it is on the sheet.',
   noteOnJoined: 'The notes about the other line stay where they are on the sheet, but name no line any more.',
 } as const;
+export const editNotices = inLanguage({ en: enEditNotices });
 
 const KEYS: Record<LineOp, string> = {
   split: 'S',
@@ -113,7 +117,7 @@ const KEYS: Record<LineOp, string> = {
 };
 
 /** Words of the bars, forms and hints about what is chosen. */
-export const editingText = {
+const enEditingText = {
   thingsWord,
   chosen: (values: readonly DocumentEntity[]) => `${thingsWord(values)} chosen`,
   operations: 'Change the line',
@@ -188,6 +192,7 @@ export const editingText = {
     range: (first: number, last: number, of: number) => `${first} to ${last} of ${of}`,
   },
 } as const;
+export const editingText = inLanguage({ en: enEditingText });
 
 function capital(words: string): string {
   return words.charAt(0).toUpperCase() + words.slice(1);

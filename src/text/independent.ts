@@ -4,6 +4,7 @@ import { inLanguage } from './language.ts';
 /** Words of the independent solution beside the traced net. */
 const en = {
   title: 'Independent solution',
+  notSetOut: 'Set out the section first.',
   lead: 'Laplace’s equation solved by finite elements between the boundaries drawn, with the levels and permeabilities entered. The traced equipotentials and flow lines are not used.',
   solve: 'Solve the section',
   again: 'Solve again',

@@ -1,4 +1,4 @@
-import { fixedText, signedText } from '#client/lib/figures.ts';
+import { fixedText, plainText, signedText } from '#client/lib/figures.ts';
 import { inLanguage } from './language.ts';
 
 /** Words of the net check beside the sheet. */
@@ -13,7 +13,7 @@ const enNetCheckText = {
     'Of the shape alone: by how much the head beside the place may be off. Angles and squares are judged in the section in which cells should be square.',
   allGood: 'No cell and no angle is poor.',
   effect: (drops: number) => `± ${fixedText(drops, 2)} drop`,
-  pressure: (value: number, unit: string) => `${Number(value.toPrecision(2))} ${unit}`,
+  pressure: (value: number, unit: string) => `${plainText(value, 2)} ${unit}`,
   between: (before: string, after: string) => `Between ${before} and ${after}`,
   inChannel: (number: number) => `channel ${number}`,
   on: (line: string) => `On ${line}`,

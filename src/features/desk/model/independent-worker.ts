@@ -1,3 +1,4 @@
+import { independentText } from '#client/text/independent.ts';
 import { type BesideSolution, besideSolution } from '#shared/compute/beside/beside-solution.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
 import { sectionOfDocument } from '#shared/compute/independent/section-of-document.ts';
@@ -37,7 +38,10 @@ function answerTo({ document, reading }: IndependentQuestion): IndependentAnswer
   return { state: 'done', beside };
 }
 
-const NOT_SET_OUT: Pick<SectionFailure, 'text' | 'at'> = { text: 'Set out the section first.', at: null };
+const NOT_SET_OUT: Pick<SectionFailure, 'text' | 'at'> = {
+  text: independentText.notSetOut,
+  at: null,
+};
 
 function failed(
   { text, at }: Pick<SectionFailure, 'text' | 'at'>,
