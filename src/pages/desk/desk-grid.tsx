@@ -1,7 +1,10 @@
-import type { ReactNode } from 'react';
+import { type ReactNode, useId } from 'react';
 import { classNames } from '#client/components/class-names.ts';
+import { type PaneId, panePx } from '#client/features/desk/model/pane-sizes.ts';
 import { deskPageText as text } from '#client/text/desk-page.ts';
+import { DeskPaneEdge } from './desk-pane-edge.tsx';
 import { PaneSwitch } from './pane-switch.tsx';
+import type { Panes } from './use-panes.ts';
 
 export type DeskPane = 'sheet' | 'schedule' | 'notes' | 'block';
 const PANES: readonly DeskPane[] = ['sheet', 'schedule', 'notes', 'block'];
@@ -21,6 +24,8 @@ interface DeskGridProps {
   /** The pane shown where they do not fit side by side. */
   pane: DeskPane;
   onPane: (pane: DeskPane) => void;
+  /** Sizes of the parts where they stand side by side. */
+  panes: Panes;
 }
 
 /**
@@ -37,19 +42,49 @@ export function DeskGrid(props: DeskGridProps) {
   );
 }
 
-function WideGrid({ tools, lines, sheet, schedule, notes, block }: DeskGridProps) {
+function WideGrid({ tools, lines, sheet, schedule, notes, block, panes }: DeskGridProps) {
+  const id = useId();
+  const { sizes, window } = panes;
+  const px = (pane: PaneId) => panePx(pane, window, sizes);
+  const shown = (pane: PaneId, className: string) =>
+    classNames('min-h-0', sizes[pane].folded ? 'hidden' : className);
   return (
-    <div className="grid min-h-0 flex-1 grid-cols-[168px_minmax(0,1fr)_320px] grid-rows-[minmax(0,1fr)_232px] lg:grid-cols-[188px_minmax(0,1fr)_340px] xl:grid-cols-[188px_minmax(0,1fr)_372px]">
-      <div className="row-span-2 flex min-h-0 flex-col border-r border-rule">{tools}</div>
-      <div className="flex min-h-0 min-w-0 flex-col">
-        {lines}
-        {sheet}
+    <div
+      className="relative grid min-h-0 flex-1 overflow-hidden"
+      style={{ gridTemplate: `minmax(0, 1fr) / ${px('tools')}px minmax(0, 1fr) ${px('margin')}px` }}
+    >
+      <div
+        id={`${id}tools`}
+        className={shown('tools', 'col-start-1 row-start-1 flex flex-col border-r border-rule')}
+      >
+        {tools}
       </div>
-      <aside className="row-span-2 flex min-h-0 flex-col border-l-[1.5px] border-ink bg-film">
+      <div className="relative col-start-2 row-start-1 flex min-h-0 min-w-0 flex-col">
+        <div className="flex min-h-0 min-w-0 flex-1 flex-col">
+          {lines}
+          {sheet}
+        </div>
+        <div
+          id={`${id}figures`}
+          className={shown('figures', 'min-w-0 shrink-0 border-t border-rule')}
+          style={{ height: px('figures') }}
+        >
+          {schedule}
+        </div>
+        <DeskPaneEdge pane="figures" side="below" paneId={`${id}figures`} panes={panes} />
+      </div>
+      <aside
+        id={`${id}margin`}
+        className={shown(
+          'margin',
+          'col-start-3 row-start-1 flex flex-col border-l-[1.5px] border-ink bg-film',
+        )}
+      >
         {notes}
         <div className="max-h-[60%] shrink-0 overflow-y-auto">{block}</div>
       </aside>
-      <div className="min-h-0 min-w-0 border-t border-rule">{schedule}</div>
+      <DeskPaneEdge pane="tools" side="left" paneId={`${id}tools`} panes={panes} />
+      <DeskPaneEdge pane="margin" side="right" paneId={`${id}margin`} panes={panes} />
     </div>
   );
 }

@@ -36,6 +36,7 @@ import { useDeskLive } from './use-desk-live.ts';
 import { useDeskNotes } from './use-desk-notes.ts';
 import { useDeskPresence } from './use-desk-presence.ts';
 import { useMargin } from './use-margin.ts';
+import { usePanes } from './use-panes.ts';
 
 /** Below this the parts of the desk do not fit side by side; the same measure as the styles' `md`. */
 const NARROW = '(max-width: 819.98px)';
@@ -54,14 +55,15 @@ export function OpenDesk(props: OpenDeskProps) {
 function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detail: NetDetailDto }) {
   const { store, saving, readOnly } = session;
   const narrow = useMedia(NARROW);
+  const { person } = useSession();
+  const panes = usePanes(person?.id ?? '');
   const [dialog, setDialog] = useState<'none' | 'send' | 'compare'>('none');
   const notes = useDeskNotes(netId, store);
-  const { margin, pane, setPane, show, close } = useMargin(store, narrow, notes);
+  const { margin, pane, setPane, show, close } = useMargin(store, narrow, notes, panes.bring);
   const checks = useDeskChecks(store);
   const notice = useNotice();
   const flush = async () => saving?.flush();
   const presence = useDeskPresence(netId, store);
-  const { person } = useSession();
   useDeskLive(netId, session);
   useSavingMoments(saving);
 
@@ -102,6 +104,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
           narrow={narrow}
           pane={pane}
           onPane={setPane}
+          panes={panes}
           tools={
             <ToolPalette
               store={store}

@@ -54,6 +54,7 @@ function balloonsOf(
       number: note.number,
       at: placeOf(note.anchor, document, reading),
       chosen: note.id === chosenId,
+      ...(note.anchor.on === 'line' ? { lineId: note.anchor.entityId } : {}),
     }));
 }
 

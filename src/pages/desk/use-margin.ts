@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import type { MarginForm } from '#client/features/desk/components/margin-form.tsx';
 import type { DeskState, DeskStore } from '#client/features/desk/model/desk-state.ts';
 import type { NoteAnchor } from '#shared/contract/notes.ts';
@@ -16,32 +16,43 @@ export function useMargin(
     setWritingAt: (anchor: NoteAnchor) => void;
     setChosenId: (id: string) => void;
   },
+  /** Unfolds the pane of what is asked for. */
+  bring: (pane: DeskPane) => void,
 ) {
   const [margin, setMargin] = useState<Margin>(NOTES);
   const [pane, setPane] = useState<DeskPane>('sheet');
   const { setWritingAt, setChosenId } = notes;
+  const bringNewest = useRef(bring);
+  useEffect(() => {
+    bringNewest.current = bring;
+  });
 
   const show = (next: Margin) => {
     setMargin(next);
     setPane('notes');
+    bring('notes');
   };
 
   useEffect(
     () =>
       store.onIntent((intent) => {
+        const front = () => {
+          setPane('notes');
+          bringNewest.current('notes');
+        };
         const form = (opened: MarginForm) => {
           setMargin({ shows: 'form', form: opened });
-          setPane('notes');
+          front();
         };
         switch (intent.type) {
           case 'writeNote':
             setWritingAt(intent.anchor);
             setMargin(NOTES);
-            return setPane('notes');
+            return front();
           case 'openNote':
             setChosenId(intent.noteId);
             setMargin(NOTES);
-            return setPane('notes');
+            return front();
           case 'openReadingPoint':
             // While points are being placed the sheet stays to the front.
             return store.getState().tool === 'readingPoint' ? undefined : setPane('schedule');
