@@ -3,6 +3,7 @@ import type { ToolId } from '../model/tool-choice.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import type { HostView, ToolHost } from '../tools/tool-host.ts';
 import type { ToolEvent } from '../tools/tool-types.ts';
+import { deskEditKey, sheetEditKey } from './edit-keys.ts';
 
 export const TOOL_KEYS: Readonly<Record<string, ToolId>> = {
   k: 'knownPoint',
@@ -44,6 +45,7 @@ export type KeyTarget = {
 
 /** Keys while the sheet has the focus: the tool in hand, panning and zooming. True when the key was used. */
 export function sheetKey(event: KeyboardEvent, target: KeyTarget): boolean {
+  if (sheetEditKey(event, target)) return true;
   if (event.ctrlKey || event.metaKey || event.altKey) return false;
   const tool = TOOL_EVENTS[event.key];
   if (tool !== undefined) {
@@ -81,6 +83,7 @@ export function deskKey(event: KeyboardEvent, target: Pick<KeyTarget, 'store'>):
     target.store.emitIntent({ type: 'openWaterLevels' });
     return true;
   }
+  if (deskEditKey(event, target)) return true;
   const tool = TOOL_KEYS[key];
   if (tool === undefined) return false;
   target.store.setTool(tool);

@@ -14,6 +14,7 @@ import { createSheetRenderer, type SheetRenderer } from '../render/sheet-rendere
 import { createToolHost, type HostView, type ToolHost } from '../tools/tool-host.ts';
 import type { Balloon, Modifiers } from '../tools/tool-types.ts';
 import { deskKey, isTyping, sheetKey } from './desk-keys.ts';
+import { sheetEditKeyUp } from './edit-keys.ts';
 import { attachGestures } from './pointer-gestures.ts';
 
 const KEYBOARD_REACH_PX = 8;
@@ -56,7 +57,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let active: readonly SceneItem[] = [];
 
   const view = () => views.getState().view;
-  const balloons = (): Balloon[] => balloonsOf(scene, view());
+  const balloons = (): Balloon[] => balloonsOf(scene, view(), options.notes());
   const keyView = (): HostView => ({
     zoom: sheetZoom(view()),
     reachPx: KEYBOARD_REACH_PX,
@@ -131,6 +132,10 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     if (used) event.preventDefault();
   }
 
+  const keyUp = (event: KeyboardEvent) => sheetEditKeyUp(event, { store });
+  /** A move by arrow keys of which the end is not heard, as when the window is left with the key held. */
+  const settle = () => store.requestEdit({ type: 'settle' });
+
   const sizes = new ResizeObserver(() => views.resize(element.clientWidth, element.clientHeight));
   sizes.observe(element);
   views.resize(element.clientWidth, element.clientHeight);
@@ -146,6 +151,11 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       onFinger: holdByFinger,
     }),
     store.subscribe((state, before) => looksDiffer(state, before) && dueScene()),
+    store.onEditRequest((event) => host.edit(event, keyView())),
+    // What is asked for is answered on the sheet, by a click or with the keys that work there.
+    store.subscribe(({ pendingEdit }, before) => {
+      if (pendingEdit !== null && pendingEdit !== before.pendingEdit) element.focus({ preventScroll: true });
+    }),
     store.onLookAt((at) => views.lookAt(sheetPx(...at))),
     views.subscribe((state, before) => {
       renderer.setView(state.view);
@@ -154,6 +164,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     }),
   ];
   element.ownerDocument.addEventListener('keydown', key);
+  element.addEventListener('keyup', keyUp);
+  element.addEventListener('blur', settle);
   if (views.getState().view.widthPx > 0) renderer.setView(views.getState().view);
   showScene();
 
@@ -167,6 +179,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       sizes.disconnect();
       for (const end of endings) end();
       element.ownerDocument.removeEventListener('keydown', key);
+      element.removeEventListener('keyup', keyUp);
+      element.removeEventListener('blur', settle);
       store.setPointer(null);
       renderer.destroy();
     },
@@ -174,14 +188,20 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
 }
 
 /** Where the notes' balloons stand in a scene, to be met there by the pointer. */
-function balloonsOf(scene: readonly SceneItem[], { zoom, seenAs }: Viewport): Balloon[] {
+function balloonsOf(
+  scene: readonly SceneItem[],
+  { zoom, seenAs }: Viewport,
+  notes: readonly NoteBalloon[],
+): Balloon[] {
+  const lines = new Map(notes.map(({ id, lineId }) => [id, lineId]));
   const back = seenAs === undefined ? IDENTITY : inverted(seenAs);
   return scene.flatMap((item) => {
     if (item.shape !== 'balloon') return [];
     const [dx, dy] = item.offsetPx;
-    return [
-      { id: noteIdOf(item.id), at: sheetPx(...mapped(back, item.at[0] + dx / zoom, item.at[1] + dy / zoom)) },
-    ];
+    const id = noteIdOf(item.id);
+    const lineId = lines.get(id);
+    const at = sheetPx(...mapped(back, item.at[0] + dx / zoom, item.at[1] + dy / zoom));
+    return [lineId === undefined ? { id, at } : { id, at, lineId }];
   });
 }
 
@@ -193,6 +213,7 @@ function looksDiffer(a: DeskState, b: DeskState): boolean {
     a.reading !== b.reading ||
     a.selection !== b.selection ||
     a.draft !== b.draft ||
+    a.pendingEdit !== b.pendingEdit ||
     a.tool !== b.tool ||
     a.hiddenKinds !== b.hiddenKinds ||
     a.guides !== b.guides ||

@@ -28,6 +28,8 @@ export type NoteBalloon = {
   readonly number: number;
   readonly at: SheetPoint;
   readonly chosen: boolean;
+  /** The line that it is about; left out where it is about none. */
+  readonly lineId?: string;
 };
 
 export type SceneInput = {
