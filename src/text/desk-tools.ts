@@ -24,6 +24,7 @@ const en = {
   lineKind: (kind: LineKind) => LINE_WORDS[kind],
   began: (line: TracedLine) => `began ${article(lineWord(line))}`,
   addedPoint: (line: TracedLine) => `added a point to ${article(lineWord(line))}`,
+  tooManyPoints: (most: number) => `A line has ${most} points at most. Finish this one and begin another.`,
   finished: (line: TracedLine) => `finished ${article(lineWord(line))}`,
   tookPointBack: (line: TracedLine) => `took back a point of ${article(lineWord(line))}`,
   movedVertex: (line: TracedLine) => `moved a point of ${article(lineWord(line))}`,

@@ -1,14 +1,12 @@
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { distanceToSegment, thinned } from '#shared/compute/geometry/thin.ts';
 
-/** A stretch is dense where its segments are no longer than this, sheet pixels. */
-const DENSE = 24;
-/** Bends of a dense stretch between which it is reshaped: those needed to stay this near, sheet pixels. */
-const BEND = 3;
+/** A stretch is dense where its segments are no longer than this, unless it is asked otherwise, sheet pixels. */
+export const DENSE = 24;
+/** Bends of a dense stretch between which it is reshaped are those needed to stay this near, as a part of that length. */
+const BEND = 1 / 8;
 /** A vertex at which the line turns by more than this is a corner, and stays one. */
 const CORNER = (35 * Math.PI) / 180;
-/** A vertex this near the join of its neighbours can belong to a dense stretch, sheet pixels. */
-const SMOOTH = 3;
 
 /**
  * A line with one vertex moved and those about it following: the shift falls off smoothly along the line, to nothing at
@@ -65,23 +63,24 @@ function fallOff(t: number): number {
  * The vertices between which a line is reshaped when it is not known where it was clicked, by index: the ends, the
  * corners, all vertices of stretches that are not dense, and of dense ones the bends.
  */
-export function bendsOf(points: readonly Pair[]): ReadonlySet<number> {
+export function bendsOf(points: readonly Pair[], dense = DENSE): ReadonlySet<number> {
   const fixed = new Set<number>();
   let start = 0;
   for (let i = 0; i < points.length; i += 1) {
-    if (!isFirm(points, i)) continue;
+    if (!isFirm(points, i, dense)) continue;
     fixed.add(i);
-    addBends(points, start, i, fixed);
+    addBends(points, [start, i], BEND * dense, fixed);
     start = i;
   }
   return fixed;
 }
 
-function isFirm(points: readonly Pair[], i: number): boolean {
+/** True for a vertex that holds a line whatever lies about it: an end, a corner, one at the end of a long segment. */
+export function isFirm(points: readonly Pair[], i: number, dense = DENSE): boolean {
   const [a, b, c] = [points[i - 1], points[i]!, points[i + 1]];
   if (a === undefined || c === undefined) return true;
   const [before, after] = [Math.hypot(b[0] - a[0], b[1] - a[1]), Math.hypot(c[0] - b[0], c[1] - b[1])];
-  if (before > DENSE || after > DENSE || distanceToSegment(b, a, c) > SMOOTH) return true;
+  if (before > dense || after > dense || distanceToSegment(b, a, c) > BEND * dense) return true;
   const turn = Math.atan2(
     (b[0] - a[0]) * (c[1] - b[1]) - (b[1] - a[1]) * (c[0] - b[0]),
     (b[0] - a[0]) * (c[0] - b[0]) + (b[1] - a[1]) * (c[1] - b[1]),
@@ -89,10 +88,15 @@ function isFirm(points: readonly Pair[], i: number): boolean {
   return Math.abs(turn) > CORNER;
 }
 
-function addBends(points: readonly Pair[], from: number, to: number, fixed: Set<number>): void {
+function addBends(
+  points: readonly Pair[],
+  [from, to]: readonly [number, number],
+  tolerance: number,
+  fixed: Set<number>,
+): void {
   if (to - from < 2) return;
   const stretch = points.slice(from, to + 1);
-  const kept = new Set(thinned(stretch, BEND));
+  const kept = new Set(thinned(stretch, tolerance));
   stretch.forEach((point, k) => {
     if (kept.has(point)) fixed.add(from + k);
   });

@@ -30,6 +30,8 @@ export type Snap = {
 export type ToolOverlay = {
   /** From the end of the line under way to where its next point would go. */
   readonly rubber: readonly [SheetPx, SheetPx] | null;
+  /** How the line would run there where it does not run straight, and what is being drawn freehand. */
+  readonly path?: readonly SheetPoint[] | null;
   readonly snap: Snap | null;
   /** True where places should be set finer than the view shows. */
   readonly magnify: boolean;

@@ -2,27 +2,23 @@ import type { LineKind, SheetPoint } from '#shared/contract/document.ts';
 import type { Snap, SnapKind, ToolOverlay } from '../model/tool-overlay.ts';
 import { COLOURS, lookOf } from './line-look.ts';
 import type { MarkShape, SceneItem } from './scene.ts';
+import { sketchItems } from './sketch-items.ts';
 
 /** What the tool in hand shows under the pointer: the band to the next point and what it snaps to. */
 export function overlayScene(overlay: ToolOverlay, kind: LineKind | null): SceneItem[] {
   const items: SceneItem[] = [];
   const colour = kind === null ? COLOURS.ink : lookOf(kind).colour;
-  if (overlay.rubber !== null) {
-    const [from, to] = overlay.rubber;
+  const points = overlay.path ?? overlay.rubber?.map(([x, y]): SheetPoint => [x, y]) ?? [];
+  if (points.length > 1) {
     const look = { colour, widthPx: 1.6, dashPx: [4, 3], end: 'none', hatchPx: 0 } as const;
-    items.push({
-      id: 'rubber',
-      shape: 'line',
-      points: [
-        [from[0], from[1]],
-        [to[0], to[1]],
-      ],
-      look,
-      strong: false,
-    });
+    items.push({ id: 'rubber', shape: 'line', points, look, strong: false });
+  }
+  if (overlay.rubber !== null) {
+    const [, to] = overlay.rubber;
     items.push({ ...markAt('next', 'cross', to[0], to[1]), colour: COLOURS.ink });
   }
   if (overlay.snap !== null) items.push(...snapItems(overlay.snap, colour));
+  items.push(...sketchItems(overlay.sketches ?? []));
   return items;
 }
 

@@ -6,7 +6,7 @@ import type { DocumentEntity } from '#shared/contract/document.ts';
 import { selectOne } from '../model/selection.ts';
 import type { Snap } from '../model/tool-overlay.ts';
 import { constrained } from './constrain.ts';
-import { keptPoint, withPointInserted, withPointMoved } from './line-points.ts';
+import { keptPoint, withPointInserted } from './line-points.ts';
 import { isFree, type Mark, markAt, reachOf } from './pick.ts';
 import { snapAt } from './snap.ts';
 import {
@@ -15,10 +15,12 @@ import {
   type Modifiers,
   rest,
   stay,
+  type ToolCommand,
   type ToolContext,
   type ToolState,
   type ToolStep,
 } from './tool-types.ts';
+import { draggedPlace, withVertexDragged } from './ways-of-drawing/fall-off.ts';
 
 type Dragging = Extract<ToolState, { at: 'dragging' }>;
 
@@ -109,9 +111,13 @@ export function letGo(state: Dragging, at: SheetPx, keys: Modifiers, context: To
     label: labelOf(state, value),
     ops: [{ op: 'put' as const, entityId, value }],
   } as const;
-  const select =
+  const { index } = state.target.kind === 'vertex' ? state.target : { index: 0 };
+  const select: ToolCommand[] =
     state.target.kind === 'vertex' && value.kind === 'line'
-      ? [{ do: 'select', selection: selectOne('line', entityId, state.target.index) } as const]
+      ? [
+          { do: 'select', selection: selectOne('line', entityId, index) },
+          { do: 'clicked', lineId: entityId, places: draggedPlace(context, entityId, value, index) },
+        ]
       : [];
   return { state: AT_REST, commands: [{ ...run, ops: [...run.ops] }, clear, ...select] };
 }
@@ -134,7 +140,7 @@ function valueAt(state: Dragging, at: SheetPx, keys: Modifiers, context: ToolCon
   const place = placeFor(state, at, keys, context);
   if (held.kind === 'line' && state.target.kind === 'vertex') {
     const line = state.withInserted?.kind === 'line' ? state.withInserted : held;
-    return withPointMoved(line, state.target.index, place);
+    return withVertexDragged(context, state.target.lineId, line, state.target.index, place);
   }
   if (held.kind === 'profile' && held.place.on === 'sheet' && state.target.kind === 'vertex') {
     const { index } = state.target;

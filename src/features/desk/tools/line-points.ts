@@ -8,15 +8,6 @@ export function keptPoint(at: SheetPx): SheetPoint {
   return [Math.round(at[0] * PER_PIXEL) / PER_PIXEL, Math.round(at[1] * PER_PIXEL) / PER_PIXEL];
 }
 
-export function withPointAdded(line: TracedLine, at: SheetPx, atStart: boolean): TracedLine {
-  const point = keptPoint(at);
-  return { ...line, points: atStart ? [point, ...line.points] : [...line.points, point] };
-}
-
-export function withPointTakenBack(line: TracedLine, atStart: boolean): TracedLine {
-  return { ...line, points: atStart ? line.points.slice(1) : line.points.slice(0, -1) };
-}
-
 export function withPointMoved(line: TracedLine, index: number, at: SheetPx): TracedLine {
   return { ...line, points: line.points.map((point, i) => (i === index ? keptPoint(at) : point)) };
 }

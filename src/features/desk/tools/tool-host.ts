@@ -3,7 +3,10 @@ import { IDENTITY } from '#shared/compute/linear-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
 import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
+import { clickedPlacesOf } from '../model/clicked-places.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import { drawingWayChoice } from '../model/drawing-way.ts';
+import type { InkClient } from '../model/ink-client.ts';
 import type { EditEvent } from '../model/pending-edit.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import type { ToolOverlay } from '../model/tool-overlay.ts';
@@ -20,6 +23,8 @@ import {
   type ToolState,
   type ToolStep,
 } from './tool-types.ts';
+import { createInkTurn } from './ways-of-drawing/ink-turn.ts';
+import { lookReach } from './ways-of-drawing/ink-way.ts';
 
 /** What the view around the tools contributes to their context. */
 export type HostView = { zoom: number; reachPx: number; balloons: readonly Balloon[] };
@@ -36,8 +41,9 @@ export type ToolHost = {
 };
 
 /** Runs the tool in hand against a desk store: keeps the machine's state and carries its commands out. */
-export function createToolHost(store: DeskStore): ToolHost {
+export function createToolHost(store: DeskStore, ink: InkClient | null = null): ToolHost {
   let state: ToolState = AT_REST;
+  const clicked = clickedPlacesOf(store);
   let copied: readonly DocumentEntity[] = [];
   const mapOf = rememberedMap();
 
@@ -57,41 +63,63 @@ export function createToolHost(store: DeskStore): ToolHost {
       snapKinds: state.aids.snapKinds,
       working: state.reading?.frame?.matrix ?? IDENTITY,
       readOnly: state.readOnly,
+      way: drawingWayChoice.getState().way,
+      clicked,
+      inkLook: ink?.newest() ?? null,
       map: mapOf(document),
       newId: store.newId,
       ...view,
     };
   }
 
-  function take(step: ToolStep): void {
+  function take(step: ToolStep, view: HostView): void {
     state = step.state;
     for (const command of step.commands) {
       if (command.do === 'keep') copied = command.values;
+      else if (command.do === 'clicked') clicked.remember(command.lineId, command.places);
+      else if (command.do === 'follow') turn.follow(command, view);
       else perform(store, command);
     }
   }
 
   /** A move by arrow keys becomes a step before anything else happens. */
   function settle(view: HostView): void {
-    if (state.at === 'nudging') take(editStep(state, { type: 'settle' }, contextFor(view)));
+    if (state.at === 'nudging') take(editStep(state, { type: 'settle' }, contextFor(view)), view);
   }
 
+  function handle(event: ToolEvent, view: HostView): void {
+    if (turn.holds(event, view)) return;
+    settle(view);
+    take(stepTool(state, event, contextFor(view)), view);
+  }
+
+  const turn = createInkTurn<HostView>(ink, {
+    handle,
+    step: (event, view) => take(stepTool(state, event, contextFor(view)), view),
+    isUnderWay: (lineId) => store.getState().draft?.lineId === lineId,
+  });
+
   return {
-    handle(event, view) {
-      settle(view);
-      take(stepTool(state, event, contextFor(view)));
-    },
+    handle,
     edit(event, view) {
       if (event.type !== 'nudge') settle(view);
-      take(editStep(state, event, contextFor(view)));
+      take(editStep(state, event, contextFor(view)), view);
     },
-    overlay: (at, keys, view) => overlayOf(state, at, keys, contextFor(view)),
+    overlay(at, keys, view) {
+      const context = contextFor(view);
+      const overlay = overlayOf(state, at, keys, context);
+      if (context.way === 'ink' && overlay.rubber !== null) turn.look(lookReach(overlay.rubber, context));
+      return overlay;
+    },
     grabs: () => isGrabbing(state),
     map: () => mapOf(store.getState().document),
   };
 }
 
-function perform(store: DeskStore, command: Exclude<ToolCommand, { do: 'keep' }>): void {
+function perform(
+  store: DeskStore,
+  command: Exclude<ToolCommand, { do: 'keep' | 'clicked' | 'follow' }>,
+): void {
   switch (command.do) {
     case 'run':
       store.run(command.label, command.ops);

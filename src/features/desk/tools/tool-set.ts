@@ -10,8 +10,18 @@ import { nextProfilePlace, profileStep } from './profile-tool.ts';
 import { selectStep } from './select-tool.ts';
 import { snapAt } from './snap.ts';
 import { soilPlaceStep } from './soil-tool.ts';
-import type { Modifiers, ToolContext, ToolEvent, ToolState, ToolStep } from './tool-types.ts';
+import {
+  type FollowedEvent,
+  type Modifiers,
+  rest,
+  type ToolContext,
+  type ToolEvent,
+  type ToolState,
+  type ToolStep,
+} from './tool-types.ts';
 import { draftLine, nextPlace, traceStep } from './trace-tool.ts';
+import { addFollowed, pathTo } from './ways-of-drawing/extend-line.ts';
+import { growingLine } from './ways-of-drawing/growing.ts';
 
 type Machine = (state: ToolState, event: ToolEvent, context: ToolContext) => ToolStep;
 
@@ -29,7 +39,8 @@ const MACHINES: Record<ToolId, Machine> = {
 };
 
 /** One step of the tool in hand: `(state, event, context) → {state, commands}`. */
-export function stepTool(state: ToolState, event: ToolEvent, context: ToolContext): ToolStep {
+export function stepTool(state: ToolState, event: ToolEvent | FollowedEvent, context: ToolContext): ToolStep {
+  if (event.type === 'followed') return context.choice === null ? rest() : addFollowed(event, context);
   return MACHINES[context.tool](state, event, context);
 }
 
@@ -54,10 +65,13 @@ export function overlayOf(
     return { rubber: from === null ? null : [from, to], snap: snapAt(context, at, keys, null), magnify };
   }
   if (context.choice === null) return { ...NO_OVERLAY, magnify };
+  if (state.at === 'sketching') return { ...NO_OVERLAY, path: state.places.map(([x, y]) => [x, y]) };
   const line = draftLine(context);
   const end = line === null ? null : growingEnd(line, context.draft?.atStart ?? false);
   const rubber = end === null ? null : ([sheetPx(...end), nextPlace(at, keys, context)] as const);
-  return { rubber, snap: snapAt(context, at, keys, context.draft?.lineId ?? null), magnify };
+  const growing = rubber === null ? null : growingLine(context);
+  const path = growing === null || rubber === null ? null : pathTo(growing, rubber[1], context);
+  return { rubber, path, snap: snapAt(context, at, keys, context.draft?.lineId ?? null), magnify };
 }
 
 /** The outline of the rectangle that is drawn about what is to be chosen. */
