@@ -6,6 +6,7 @@ import { createDataSource } from './entities/data-source.ts';
 import { systemClock } from './http/clock.ts';
 import { createRenderProcess } from './imaging/render-process.ts';
 import { createCalculationSheetHandler } from './jobs/handlers/make-calculation-sheet.ts';
+import { createRenditionHandler } from './jobs/handlers/make-rendition.ts';
 import { createRenderDrawingHandler } from './jobs/handlers/render-drawing.ts';
 import { createSendMailHandler } from './jobs/handlers/send-mail.ts';
 import type { JobHandlers } from './jobs/jobs-port.ts';
@@ -17,6 +18,7 @@ import { createSmtpMailer } from './mail/smtp-mailer.ts';
 import { requeueCalculationSheets } from './services/calculation-sheet-service.ts';
 import { requeueWaitingMails } from './services/mail-delivery.ts';
 import { requeueRenderJobs } from './services/render-job-service.ts';
+import { requeueRenditions } from './services/rendition-job-service.ts';
 import { readingDeps } from './services/service-deps.ts';
 import { createLocalDiskStorage } from './storage/local-disk-storage.ts';
 import { sweepLeftovers } from './storage/sweep-leftovers.ts';
@@ -50,6 +52,7 @@ export async function compose(config: AppConfig, logger: Logger): Promise<Produc
       await requeueRenderJobs(readingDeps(deps));
       await requeueWaitingMails(deps);
       await requeueCalculationSheets(readingDeps(deps));
+      await requeueRenditions(readingDeps(deps));
     },
     async stop(graceMs) {
       await jobs.stop(graceMs);
@@ -76,6 +79,7 @@ function jobHandlers(deps: AppDeps, mailer: MailerPort): JobHandlers {
   return {
     'render-drawing': createRenderDrawingHandler(deps, () => createRenderProcess()),
     'make-calculation-sheet': createCalculationSheetHandler(deps),
+    'make-rendition': createRenditionHandler(deps),
     // Where mails are read on a page of ours their links have to stay.
     'send-mail': createSendMailHandler({ ...deps, mailer, forgetLinks: smtpUrl !== null || production }),
   };

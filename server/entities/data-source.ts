@@ -11,6 +11,7 @@ import { CommandBatchEntity, DocumentEntityRow, NetEntity, SectionEntity } from 
 import { NoteEntity, NoteEntryEntity } from './note-entity.ts';
 import { PersonEntity, PersonTokenEntity, SessionEntity, SignInFailureEntity } from './person-entity.ts';
 import { NetPresenceEntity } from './presence-entity.ts';
+import { RenditionEntity } from './rendition-entity.ts';
 
 export const entities = [
   PersonEntity,
@@ -23,6 +24,7 @@ export const entities = [
   DrawingEntity,
   SheetEntity,
   RenderJobEntity,
+  RenditionEntity,
   SectionEntity,
   NetEntity,
   DocumentEntityRow,

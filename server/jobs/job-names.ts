@@ -13,6 +13,7 @@ export const QUEUES: Record<JobName, QueueRules> = {
   'render-drawing': { concurrency: 1, expireInSeconds: 20 * 60 * 60 },
   'send-mail': { concurrency: 2, expireInSeconds: 10 * 60 },
   'make-calculation-sheet': { concurrency: 1, expireInSeconds: 10 * 60 },
+  'make-rendition': { concurrency: 1, expireInSeconds: 20 * 60 },
 };
 export const JOB_NAMES = Object.keys(QUEUES) as JobName[];
 

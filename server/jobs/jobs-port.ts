@@ -8,6 +8,8 @@ export interface JobIds {
   'send-mail': string;
   /** Row of `calculation_sheet`. */
   'make-calculation-sheet': string;
+  /** Row of `rendition`. */
+  'make-rendition': string;
 }
 export type JobName = keyof JobIds;
 /** Does the work of one row; idempotent, and stops soon after `signal` aborts. */

@@ -12,6 +12,7 @@ import { SignInFailures1796126400011 } from './1796126400011-sign-in-failures.ts
 import { DocumentVersion21796126400013 } from './1796126400013-document-version-2.ts';
 import { CalculationSheets1796126400060 } from './1796126400060-calculation-sheets.ts';
 import { FirstView1796126400100 } from './1796126400100-first-view.ts';
+import { Renditions1796126400110 } from './1796126400110-renditions.ts';
 import { NetPresence1796126400120 } from './1796126400120-net-presence.ts';
 
 /** In the order they run. */
@@ -30,5 +31,6 @@ export const migrations = [
   DocumentVersion21796126400013,
   CalculationSheets1796126400060,
   FirstView1796126400100,
+  Renditions1796126400110,
   NetPresence1796126400120,
 ];

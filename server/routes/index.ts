@@ -11,6 +11,7 @@ import { netRoutes } from './net-routes.ts';
 import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
 import { presenceRoutes } from './presence-routes.ts';
+import { renditionRoutes } from './rendition-routes.ts';
 import { revisionRoutes } from './revision-routes.ts';
 import { scheduleRoutes } from './schedule-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
@@ -27,6 +28,7 @@ export const routes: readonly RouteRecord[] = [
   ...liveRoutes,
   ...mailRoutes,
   ...drawingRoutes,
+  ...renditionRoutes,
   ...sectionRoutes,
   ...netRoutes,
   ...netFileRoutes,

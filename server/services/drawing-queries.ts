@@ -2,8 +2,9 @@ import { type EntityManager, In, IsNull, Not } from 'typeorm';
 import { DrawingEntity, RenderJobEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
 import { notFound } from '#server/errors/app-error.ts';
 import { originalKey } from '#server/storage/storage-keys.ts';
-import type { DrawingDto, RenderJobDto, SectionDto } from '#shared/contract/drawings.ts';
+import type { DrawingDto, RenderJobDto, SectionDto, SheetDto } from '#shared/contract/drawings.ts';
 import { personRefs } from './person-refs.ts';
+import { shownPictures } from './rendition-queries.ts';
 import { sectionsOfSheets } from './section-queries.ts';
 import { presentSheet } from './sheet-presenter.ts';
 
@@ -50,11 +51,15 @@ async function present(manager: EntityManager, drawings: DrawingEntity[]): Promi
     manager,
     sheets.map((sheet) => sheet.id),
   );
+  const shown = await shownPictures(
+    manager,
+    sheets.map((sheet) => sheet.id),
+  );
   return drawings.map((drawing) => {
     const own = sheets.filter((sheet) => sheet.drawingId === drawing.id);
     return toDto(
       drawing,
-      own,
+      own.map((sheet) => presentSheet(sheet, shown.get(sheet.id))),
       sections.filter((section) => own.some((sheet) => sheet.id === section.sheetId)),
       jobs.find((job) => job.drawingId === drawing.id),
       people.get(drawing.uploadedBy)?.name ?? '',
@@ -64,7 +69,7 @@ async function present(manager: EntityManager, drawings: DrawingEntity[]): Promi
 
 function toDto(
   drawing: DrawingEntity,
-  sheets: SheetEntity[],
+  sheets: SheetDto[],
   sections: SectionDto[],
   job: RenderJobEntity | undefined,
   uploaderName: string,
@@ -87,7 +92,7 @@ function toDto(
     uploadedAt: drawing.uploadedAt.toISOString(),
     archivedAt: drawing.archivedAt?.toISOString() ?? null,
     job: jobDto(job),
-    sheets: sheets.map(presentSheet),
+    sheets,
     sections,
   };
 }

@@ -7,6 +7,7 @@ import { readDocument } from './net-document.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { placeOfNet } from './net-place.ts';
 import { netSummaryOf } from './net-summaries.ts';
+import { shownPictures } from './rendition-queries.ts';
 import { sectionById } from './section-queries.ts';
 import { presentSheet } from './sheet-presenter.ts';
 
@@ -22,7 +23,7 @@ export async function netDetail(
   return {
     net: await netSummaryOf(manager, netId),
     section,
-    sheet: presentSheet(sheet),
+    sheet: presentSheet(sheet, (await shownPictures(manager, [sheet.id])).get(sheet.id)),
     drawing: { id: drawing.id, number: drawing.number, title: drawing.title, revision: drawing.revision },
     dam: { id: dam.id, name: dam.name, datum: dam.datum, fullSupplyLevel: dam.fullSupplyLevel },
     document: await readDocument(manager, place),

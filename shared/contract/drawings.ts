@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { id, personRef, shortText, timestamp } from './common.ts';
+import { shownPicture } from './renditions.ts';
 
 export const drawingStage = z.enum(['asBuilt', 'design']);
 
@@ -32,6 +33,8 @@ export const sheetDto = z.object({
     readyZoom: z.optional(z.number()),
     format: z.enum(['png', 'jpeg', 'webp']),
   }),
+  /** The cleaned-up picture by which the sheet is shown; absent where it is shown as it was scanned. */
+  shown: z.optional(shownPicture),
   /** A plain sentence when the sheet was drawn reduced or with damage; empty otherwise. */
   note: z.string(),
 });

@@ -24,6 +24,7 @@ const start = async () => {
     'render-drawing': createRenderDrawingHandler(app.deps),
     'send-mail': async () => undefined,
     'make-calculation-sheet': async () => undefined,
+    'make-rendition': async () => undefined,
   });
 };
 

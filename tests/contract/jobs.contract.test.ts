@@ -41,6 +41,7 @@ describe.each(adapters)('background work in %s', (_name, create) => {
     'render-drawing': nothing,
     'send-mail': send,
     'make-calculation-sheet': nothing,
+    'make-rendition': nothing,
   });
   const rowId = () => crypto.randomUUID();
   const until = async (isTrue: () => boolean) => {
@@ -155,6 +156,7 @@ describe.each(adapters)('background work in %s', (_name, create) => {
       'render-drawing': note('render'),
       'send-mail': note('mail'),
       'make-calculation-sheet': note('sheet'),
+      'make-rendition': note('rendition'),
     });
     await jobs.enqueue(db.manager, 'render-drawing', rowId());
     await until(() => ran.length > 0);
@@ -208,6 +210,7 @@ describe('the queue in PostgreSQL', () => {
     await later.start({
       'render-drawing': async () => {},
       'make-calculation-sheet': async () => {},
+      'make-rendition': async () => {},
       'send-mail': async (id) => {
         ran.push(id);
       },

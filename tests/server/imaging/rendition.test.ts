@@ -134,7 +134,7 @@ describe('a cleaned-up picture', () => {
     expect([made.widthPx, made.heightPx]).toEqual([geometry.widthPx, geometry.heightPx]);
     const fromBase = projectiveInverse(geometry.toBase);
     for (const mark of MARKS) {
-      const [x, y] = throughPlane(fromBase, ...mark);
+      const [x, y] = throughPlane(fromBase, mark[0], mark[1]);
       const [u, v] = centreAbout(picture, [x, y], 235);
       expect(Math.hypot(u - x, v - y)).toBeLessThan(0.5);
     }
@@ -144,7 +144,7 @@ describe('a cleaned-up picture', () => {
     const { geometry, picture } = await cleaned(base, { turnDeg: level });
     const fromBase = projectiveInverse(geometry.toBase);
     const [first, second] = [MARKS[0], MARKS[1]].map((mark) =>
-      centreAbout(picture, throughPlane(fromBase, ...mark), 235),
+      centreAbout(picture, throughPlane(fromBase, mark[0], mark[1]), 235),
     );
     expect(Math.abs(first![1] - second![1])).toBeLessThan(0.1);
   });

@@ -165,6 +165,7 @@ describe('the worker and a real mail server', () => {
       'render-drawing': async () => {},
       'send-mail': createSendMailHandler(deps),
       'make-calculation-sheet': async () => {},
+      'make-rendition': async () => {},
     });
   }
   const writeReal = () =>

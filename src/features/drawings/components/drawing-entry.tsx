@@ -25,7 +25,7 @@ export function DrawingEntry({ drawing }: { drawing: DrawingDto }) {
         aria-hidden="true"
         className="block min-h-[128px] border-r border-ink bg-sheet max-sm:min-h-[92px]"
       >
-        <Thumbnail sheetId={drawing.sheets[0]?.id} className="h-[128px] w-full max-sm:h-[92px]" />
+        <Thumbnail sheet={drawing.sheets[0]} className="h-[128px] w-full max-sm:h-[92px]" />
       </Link>
       <div className="px-3.5 pt-2 pb-1.5 max-sm:px-2.5">
         <h3 className="m-0 inline text-md font-bold">

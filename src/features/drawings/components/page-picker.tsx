@@ -17,7 +17,7 @@ export function PagePicker({ sheets, chosen }: { sheets: readonly SheetDto[]; ch
               aria-current={sheet.id === chosen.id ? 'page' : undefined}
               className="block w-[112px] border border-rule bg-white p-1 text-center text-sm no-underline aria-[current]:border-ink aria-[current]:bg-chosen aria-[current]:font-semibold"
             >
-              <Thumbnail sheetId={sheet.id} className="h-[72px] w-full" />
+              <Thumbnail sheet={sheet} className="h-[72px] w-full" />
               {text.sheet(sheet.pageNumber)}
             </Link>
           </li>

@@ -1,11 +1,14 @@
 import { apiUrl } from '#client/lib/http.ts';
+import type { SheetDto } from '#shared/contract/drawings.ts';
 
 /** A sheet in small; the paper alone until there is one. Decorative: the name stands beside it. */
-export function Thumbnail({ sheetId, className }: { sheetId: string | undefined; className: string }) {
-  if (sheetId === undefined) return <div className={className} />;
+export function Thumbnail({ sheet, className }: { sheet: SheetDto | undefined; className: string }) {
+  if (sheet === undefined) return <div className={className} />;
+  // Browsers keep it for ever: another picture of the sheet needs another address.
+  const picture = sheet.shown ? `?picture=${sheet.shown.id}` : '';
   return (
     <img
-      src={apiUrl(`/sheets/${sheetId}/thumbnail`)}
+      src={apiUrl(`/sheets/${sheet.id}/thumbnail${picture}`)}
       alt=""
       loading="lazy"
       decoding="async"
