@@ -1,9 +1,9 @@
 import type { DrawingWay } from '#client/features/desk/model/drawing-way.ts';
+import { inLanguage } from './language.ts';
 
 /** Words of the ways in which a line is drawn. */
-export const drawingWayText = {
+const enDrawingWay = {
   title: 'Way of drawing',
-  key: 'D',
   names: {
     straight: 'Straight',
     smooth: 'Smooth',
@@ -22,3 +22,5 @@ export const drawingWayText = {
   noInk: 'No drawn line was found between the two clicks: they are joined straight.',
   scanUnread: 'The scan could not be read here: the two clicks are joined straight.',
 } as const;
+
+export const drawingWayText = inLanguage({ en: enDrawingWay });

@@ -1,5 +1,6 @@
 import type { DeskStore } from '../model/desk-state.ts';
-import type { ToolId } from '../model/tool-choice.ts';
+import { nextDrawingWay } from '../model/drawing-way.ts';
+import { lineChoiceOf, type ToolId } from '../model/tool-choice.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import type { HostView, ToolHost } from '../tools/tool-host.ts';
 import type { ToolEvent } from '../tools/tool-types.ts';
@@ -17,6 +18,8 @@ export const TOOL_KEYS: Readonly<Record<string, ToolId>> = {
   v: 'select',
 };
 export const WATER_KEY = 'w';
+/** Goes on to the next way of drawing lines. */
+export const WAY_KEY = 'd';
 
 const PAN_PX = 40;
 const PAN_FAR = 10;
@@ -84,10 +87,19 @@ export function deskKey(event: KeyboardEvent, target: Pick<KeyTarget, 'store'>):
     return true;
   }
   if (deskEditKey(event, target)) return true;
+  if (key === WAY_KEY && drawsLines(target.store)) {
+    nextDrawingWay();
+    return true;
+  }
   const tool = TOOL_KEYS[key];
   if (tool === undefined) return false;
   target.store.setTool(tool);
   return true;
+}
+
+function drawsLines(store: DeskStore): boolean {
+  const { tool, boundaryKind, readOnly } = store.getState();
+  return !readOnly && lineChoiceOf(tool, boundaryKind) !== null;
 }
 
 /** True when a key belongs to a field, a dialog or a menu and not to the desk. */

@@ -1,7 +1,10 @@
 import { type ScreenPx, type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { IDENTITY, inverted, mapped } from '#shared/compute/linear-map.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
+import { clickedPlacesOf } from '../model/clicked-places.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
+import { drawingWayChoice } from '../model/drawing-way.ts';
+import { createInkClient } from '../model/ink-client.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
@@ -48,7 +51,9 @@ export type SheetController = {
 export function createSheetController(options: SheetControllerOptions): SheetController {
   const { element, sheet, store, views } = options;
   const renderer = createSheetRenderer(options.layers, sheet);
-  const host = createToolHost(store);
+  const ink = createInkClient(sheet);
+  const host = createToolHost(store, ink);
+  const clicked = clickedPlacesOf(store);
   let pointer: { at: SheetPx; keys: Modifiers; view: HostView } | null = null;
   let overlay: ToolOverlay = NO_OVERLAY;
   let fingerHolds = false;
@@ -81,6 +86,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       zoom: view().zoom,
       seenAs: view().seenAs ?? null,
       frame: options.frame,
+      clickedOn: clicked.among,
     });
     const parts = partScene(scene);
     active = parts.active;
@@ -136,6 +142,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   /** A move by arrow keys of which the end is not heard, as when the window is left with the key held. */
   const settle = () => store.requestEdit({ type: 'settle' });
 
+  ink.onLook(() => pointer !== null && showOverlay());
   const sizes = new ResizeObserver(() => views.resize(element.clientWidth, element.clientHeight));
   sizes.observe(element);
   views.resize(element.clientWidth, element.clientHeight);
@@ -156,6 +163,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     store.subscribe(({ pendingEdit }, before) => {
       if (pendingEdit !== null && pendingEdit !== before.pendingEdit) element.focus({ preventScroll: true });
     }),
+    drawingWayChoice.subscribe(() => showOverlay()),
     store.onLookAt((at) => views.lookAt(sheetPx(...at))),
     views.subscribe((state, before) => {
       renderer.setView(state.view);
@@ -177,6 +185,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     destroy() {
       sceneDue = false;
       sizes.disconnect();
+      ink.close();
       for (const end of endings) end();
       element.ownerDocument.removeEventListener('keydown', key);
       element.removeEventListener('keyup', keyUp);

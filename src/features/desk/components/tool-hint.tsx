@@ -2,13 +2,18 @@ import { useStore } from 'zustand';
 import { fixedText, plainText } from '#client/lib/figures.ts';
 import { deskPaletteText as text } from '#client/text/desk-palette.ts';
 import { deskToolText } from '#client/text/desk-tools.ts';
+import { drawingWayText } from '#client/text/drawing-ways.ts';
 import { profileText } from '#client/text/profiles.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
+import { type ClickedPlaces, clickedPlacesOf } from '../model/clicked-places.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
+import { type DrawingWay, drawingWayChoice } from '../model/drawing-way.ts';
+import { lineChoiceOf } from '../model/tool-choice.ts';
 
 /** What the tool in hand does now, in sentences. */
 export function ToolHint({ store }: { store: DeskStore }) {
-  const sentences = useStore(store, hintOf);
+  const way = useStore(drawingWayChoice, (choice) => choice.way);
+  const sentences = useStore(store, (state) => hintOf(state, clickedPlacesOf(store), way));
   return (
     <div role="status" className="mx-4 mt-3 min-h-[92px] text-sm text-ink-2">
       {sentences.split('\n').map((sentence) => (
@@ -21,14 +26,20 @@ export function ToolHint({ store }: { store: DeskStore }) {
 }
 
 /** The hint as lines of one text, so that it is drawn again only when it says something else. */
-function hintOf(state: DeskState): string {
+function hintOf(state: DeskState, clicked: ClickedPlaces, way: DrawingWay): string {
   if (state.readOnly) return text.readOnly;
   const drawn = state.draft === null ? undefined : state.document.entities[state.draft.lineId]?.value;
   if (drawn?.kind === 'line') {
-    return `${text.tracing(deskToolText.lineKind(drawn.line), drawn.points.length)}\n${text.tracingKeys}`;
+    // A smooth line has many vertices; what counts for the hand are the clicks.
+    const count = clicked.among(state.draft?.lineId ?? '', drawn.points).size || drawn.points.length;
+    const kind = deskToolText.lineKind(drawn.line);
+    return `${text.tracing(kind, count)}\n${text.tracingKeys}\n${drawingWayText.hints[way]}`;
   }
   if (drawn?.kind === 'profile' && drawn.place.on === 'sheet') {
     return `${text.tracing(profileText.drawn, drawn.place.points.length)}\n${text.tracingKeys}`;
+  }
+  if (lineChoiceOf(state.tool, state.boundaryKind) !== null && way !== 'straight') {
+    return `${text.hints[state.tool]}\n${drawingWayText.hints[way]}`;
   }
   return chosenLineHint(state) ?? text.hints[state.tool];
 }

@@ -1,3 +1,4 @@
+import { Fragment } from 'react';
 import { useStore } from 'zustand';
 import { classNames } from '#client/components/class-names.ts';
 import { type PaletteTool, deskPaletteText as text } from '#client/text/desk-palette.ts';
@@ -5,6 +6,7 @@ import type { DeskStore } from '../model/desk-state.ts';
 import { BOUNDARY_KINDS, type BoundaryKind } from '../model/tool-choice.ts';
 import type { HistoryKeeping } from '../saving/keep-history.ts';
 import { TOOL_KEYS, WATER_KEY } from './desk-keys.ts';
+import { DrawingWays } from './drawing-ways.tsx';
 import { FirstGuess } from './first-guess.tsx';
 import { HistorySteps } from './history-steps.tsx';
 import { ToolHint } from './tool-hint.tsx';
@@ -44,7 +46,10 @@ export function ToolPalette({ store, layout = 'column', keeping = null, classNam
             {group.title}
           </h2>
           {group.tools.map((tool) => (
-            <PaletteButton key={tool} store={store} tool={tool} column={column} />
+            <Fragment key={tool}>
+              <PaletteButton store={store} tool={tool} column={column} />
+              {group.title === text.trace && <WaysUnder store={store} tool={tool} column={column} />}
+            </Fragment>
           ))}
           {group.tools.includes('boundary') && <BoundaryKinds store={store} column={column} />}
         </div>
@@ -90,6 +95,12 @@ function PaletteButton({ store, tool, column }: { store: DeskStore; tool: Palett
       )}
     </button>
   );
+}
+
+/** The ways of drawing stand under the tool in hand that draws lines. */
+function WaysUnder({ store, tool, column }: { store: DeskStore; tool: PaletteTool; column: boolean }) {
+  const shown = useStore(store, (state) => state.tool === tool && !state.readOnly);
+  return shown ? <DrawingWays column={column} /> : null;
 }
 
 function keyOf(tool: PaletteTool): string {

@@ -39,6 +39,13 @@ export function createClickedPlaces(): ClickedPlaces {
   };
 }
 
+/** The way in which the piece was drawn that a vertex lies in: that of the next clicked place; null where it is not known. */
+export function wayOfPiece(clicked: ReadonlyMap<number, ClickedPlace>, index: number): ClickedPlace['way'] {
+  let next = Number.POSITIVE_INFINITY;
+  for (const i of clicked.keys()) if (i >= index && i < next) next = i;
+  return clicked.get(next)?.way ?? null;
+}
+
 const ofStores = new WeakMap<DeskStore, ClickedPlaces>();
 
 /** The clicked places of one open net, for as long as it is open. */

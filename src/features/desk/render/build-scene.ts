@@ -11,11 +11,13 @@ import {
   type TracedLine,
 } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
+import type { ClickedPlaces } from '../model/clicked-places.ts';
 import type { HideableKind } from '../model/desk-state.ts';
 import type { GuidesByOwner } from '../model/guides.ts';
 import type { Selection } from '../model/selection.ts';
 import type { SheetFrame } from '../model/viewport.ts';
 import { guideItems } from './guide-items.ts';
+import { handledVertices } from './handle-spacing.ts';
 import { COLOURS, lookOf, tracedLook, unfinishedLook } from './line-look.ts';
 import { placeWords } from './place-words.ts';
 import { profileItems } from './profile-items.ts';
@@ -50,6 +52,8 @@ export type SceneInput = {
   readonly seenAs: LinearMap | null;
   /** The section's part of the sheet, outlined when the sheet holds more; null = the whole sheet. */
   readonly frame: SheetFrame | null;
+  /** Vertices of a line that were clicked; left out where nothing is drawn. */
+  readonly clickedOn?: ClickedPlaces['among'];
 };
 
 type Shown = { readonly id: string; readonly value: DocumentEntity };
@@ -192,8 +196,10 @@ function handleItems(shown: readonly Shown[], input: SceneInput): SceneMark[] {
   const line = shown.find((entity) => entity.id === id)?.value;
   if (selection.kind === 'profile') return shown.flatMap((entity) => profileHandles(entity, input));
   if (id === undefined || line?.kind !== 'line') return [];
-  return line.points.map((at, i) =>
-    handleOf(id, line, at, i, selection.vertex === i && input.draftId === null),
+  const chosen = input.draftId === null ? selection.vertex : null;
+  const clicked = input.clickedOn?.(id, line.points) ?? new Map();
+  return handledVertices(line.points, clicked, input.zoom, chosen).map((i) =>
+    handleOf(id, line, line.points[i]!, i, chosen === i),
   );
 }
 

@@ -1,7 +1,7 @@
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { bendsOf, DENSE, isFirm, reshaped } from '#shared/compute/geometry/reshape.ts';
 import type { SheetPoint, TracedLine } from '#shared/contract/document.ts';
-import type { ClickedPlace } from '../../model/clicked-places.ts';
+import { type ClickedPlace, wayOfPiece } from '../../model/clicked-places.ts';
 import { keptPoint } from '../line-points.ts';
 import type { ToolContext } from '../tool-types.ts';
 
@@ -48,18 +48,11 @@ export function draggedPlace(
   const at = points[index];
   const before = context.document.entities[lineId]?.value;
   const clicked = context.clicked.among(lineId, before?.kind === 'line' ? before.points : points);
-  return at === undefined || clicked.size === 0 ? [] : [{ at, way: wayAt(clicked, index) }];
-}
-
-/** The way of the piece in which a vertex lies: that of the next clicked place. */
-function wayAt(clicked: ReadonlyMap<number, ClickedPlace>, index: number): ClickedPlace['way'] {
-  let next = Number.POSITIVE_INFINITY;
-  for (const i of clicked.keys()) if (i >= index && i < next) next = i;
-  return clicked.get(next)?.way ?? null;
+  return at === undefined || clicked.size === 0 ? [] : [{ at, way: wayOfPiece(clicked, index) }];
 }
 
 function isSmooth(clicked: ReadonlyMap<number, ClickedPlace>, index: number): boolean {
-  return wayAt(clicked, index) === 'smooth';
+  return wayOfPiece(clicked, index) === 'smooth';
 }
 
 /** Distance along the line of every vertex from one of them. */
