@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os';
 import sharp, { type Metadata, type Sharp } from 'sharp';
 import { MAX_PIXELS } from '#shared/contract/limits.ts';
 import { RenderRefusal, refusals } from './refusal.ts';
@@ -8,9 +9,14 @@ const LOADERS = ['Png', 'Jpeg', 'Webp', 'Tiff'].flatMap((name) => [
   `VipsForeignLoad${name}Buffer`,
 ]);
 
+/** More threads than this need more memory and wait for the decoder anyway. */
+const MOST_THREADS = 4;
+
 /** Sets libvips up for one file after the other in a process with little memory. */
 export function prepareDecoder(): void {
   sharp.cache(false);
+  // By itself the package takes one thread where it finds glibc; tiles are packed while the next rows are decoded.
+  sharp.concurrency(Math.min(MOST_THREADS, availableParallelism()));
   sharp.block({ operation: ['VipsForeignLoad'] });
   sharp.unblock({ operation: LOADERS });
 }

@@ -3,7 +3,7 @@ import { probeImage } from './probe-image.ts';
 import { RenderRefusal } from './refusal.ts';
 import { renderImage } from './render-image.ts';
 import { collectConsole } from './render-log.ts';
-import type { ProbeResult, RenderAnswer, RenderOrder } from './render-types.ts';
+import type { ProbeResult, RenderAnswer, RenderOrder, RenderReport } from './render-types.ts';
 import { sniffFile } from './sniff.ts';
 
 /*
@@ -39,12 +39,16 @@ async function obey(order: RenderOrder): Promise<RenderAnswer> {
   const { id } = order;
   if (order.kind === 'probe') return { id, kind: 'probed', result: await probe(order.file) };
   const onProgress = (share: number) => answer({ id, kind: 'progress', share });
+  const report: RenderReport = {
+    progress: onProgress,
+    firstView: (view) => answer({ id, kind: 'firstView', view }),
+  };
   if (order.kind === 'rendition') {
     const { renderRendition } = await import('./rendition.ts');
     return { id, kind: 'renditionMade', result: await renderRendition(order.request, onProgress) };
   }
   const render = order.request.kind === 'pdf' ? (await pdfPart()).renderPdf : renderImage;
-  return { id, kind: 'rendered', result: await render(order.request, onProgress) };
+  return { id, kind: 'rendered', result: await render(order.request, report) };
 }
 
 function explain(id: number, error: unknown): RenderAnswer {

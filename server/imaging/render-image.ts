@@ -1,23 +1,21 @@
 import path from 'node:path';
 import type { Metadata, Sharp } from 'sharp';
 import { MAX_PIXELS } from '#shared/contract/limits.ts';
+import { takesLong, writeFirstView } from './first-view.ts';
 import { openImage, readHeader, refuseDecoding, statedDpi } from './image-source.ts';
 import { isPlainLab, openLab } from './lab-tiff.ts';
 import { refusals } from './refusal.ts';
-import type { RenderedSheet, RenderRequest, TileFormat } from './render-types.ts';
+import type { RenderedSheet, RenderReport, RenderRequest, TileFormat } from './render-types.ts';
 import { pixelHeightRatio, squaredSize } from './square-pixels.ts';
 import { readTiffPages, type TiffPage } from './tiff-directory.ts';
 import { sampledFormat } from './tile-format.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
 
 /** Draws one page of a scan at its own size, upright, in 8-bit grey or sRGB on white. @throws RenderRefusal */
-export async function renderImage(
-  request: RenderRequest,
-  onProgress: (share: number) => void,
-): Promise<RenderedSheet> {
+export async function renderImage(request: RenderRequest, report: RenderReport): Promise<RenderedSheet> {
   const { file, pageNumber, outFolder } = request;
   const directory = request.kind === 'tiff' ? (await readTiffPages(file))[pageNumber - 1] : undefined;
-  if (directory && isPlainLab(directory)) return renderLab(request, directory, onProgress);
+  if (directory && isPlainLab(directory)) return renderLab(request, directory, report);
   const header = await readHeader(file, pageNumber);
   const stored = pixelHeightRatio(directory);
   const ratio = liesOnItsSide(header) ? 1 / stored : stored;
@@ -28,21 +26,27 @@ export async function renderImage(
   }
   try {
     const format = await chooseFormat(request, header, directory);
-    const image = upright(await toEightBit(openImage(file, pageNumber), request, header), header);
-    if (ratio !== 1) image.resize({ width: size.widthPx, height: size.heightPx, fit: 'fill' });
-    const tiles = await writeTilePyramid(image, size, format, outFolder, onProgress);
-    const dpi = statedDpi(header);
+    const open = async () => upright(await toEightBit(openImage(file, pageNumber), request, header), header);
+    const stated = statedDpi(header);
     // Stated across the page as stored; a page stretched across has the finer resolution down the page everywhere.
-    return { ...size, dpi: dpi && stored < 1 ? dpi / stored : dpi, ...tiles, note: stretchNote(ratio) };
+    const dpi = stated && stored < 1 ? stated / stored : stated;
+    const sheet = { ...size, dpi, note: stretchNote(ratio) };
+    if (takesLong(size)) {
+      const first = { ...sheet, tileFormat: format, sourceRows: scanned.heightPx };
+      report.firstView(await writeFirstView(await open(), first, outFolder));
+    }
+    const image = await open();
+    if (ratio !== 1) image.resize({ width: size.widthPx, height: size.heightPx, fit: 'fill' });
+    return { ...sheet, ...(await writeTilePyramid(image, size, format, outFolder, report.progress)) };
   } catch (error) {
     return refuseDecoding(error);
   }
 }
 
-async function renderLab(request: RenderRequest, page: TiffPage, onProgress: (share: number) => void) {
+async function renderLab(request: RenderRequest, page: TiffPage, report: RenderReport) {
   const image = await openLab(request.file, request.pageNumber, page, path.dirname(request.outFolder));
   const size = { widthPx: page.widthPx, heightPx: page.heightPx };
-  const tiles = await writeTilePyramid(image, size, 'jpeg', request.outFolder, onProgress);
+  const tiles = await writeTilePyramid(image, size, 'jpeg', request.outFolder, report.progress);
   return { ...size, dpi: null, ...tiles, note: '' };
 }
 

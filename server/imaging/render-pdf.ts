@@ -4,13 +4,14 @@ import sharp from 'sharp';
 import { DEFAULT_DPI } from '#shared/contract/limits.ts';
 import { BandRaster } from './band-raster.ts';
 import { drawBand, refusePictureFaults } from './draw-band.ts';
+import { firstLevelOf, writeFirstView } from './first-view.ts';
 import { flatShare, LINE_WORK_SHARE } from './flatness.ts';
 import { openPage, withPdf } from './pdf-document.ts';
 import { type ChosenDpi, chooseDpi, mainScanDpi } from './pdf-dpi.ts';
 import { largestPicturePixels } from './pdf-picture-sizes.ts';
 import { takeWarnings } from './render-log.ts';
 import { renderScan } from './render-scan.ts';
-import type { RenderedSheet, RenderRequest } from './render-types.ts';
+import type { FirstView, RenderedSheet, RenderReport, RenderRequest } from './render-types.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
 
 /**
@@ -20,6 +21,8 @@ import { writeTilePyramid } from './tile-pyramid.ts';
 const BAND_PIXELS = 24_000_000;
 /** Pixels handed on at a time, so that no second copy of the band exists. */
 const SLICE_PIXELS = 2_000_000;
+/** A page with more pixels has its first view drawn before it. */
+const LONG_DRAWING_PIXELS = 20_000_000;
 /** Share of the work that is drawing; the rest is cutting tiles. */
 const DRAWING_SHARE = 0.7;
 
@@ -31,31 +34,25 @@ interface DrawnPage extends ChosenDpi {
 }
 
 /** One page of a PDF: a scan as it is, anything else drawn, turned as the page says, on white. @throws RenderRefusal */
-export async function renderPdf(
-  request: RenderRequest,
-  onProgress: (share: number) => void,
-): Promise<RenderedSheet> {
+export async function renderPdf(request: RenderRequest, report: RenderReport): Promise<RenderedSheet> {
   const hasPictures = (await largestPicturePixels(request.file)) > 0;
-  if (!hasPictures) return renderDrawn(request, onProgress);
+  if (!hasPictures) return renderDrawn(request, report);
   const { withoutEmptyPictures } = await import('./without-empty-pictures.ts');
-  return withoutEmptyPictures(request, (changed) => renderWithPictures(changed, onProgress));
+  return withoutEmptyPictures(request, (changed) => renderWithPictures(changed, report));
 }
 
-async function renderWithPictures(
-  request: RenderRequest,
-  onProgress: (share: number) => void,
-): Promise<RenderedSheet> {
-  const asItIs = await renderAsScan(request, onProgress);
+async function renderWithPictures(request: RenderRequest, report: RenderReport): Promise<RenderedSheet> {
+  const asItIs = await renderAsScan(request, report);
   if (asItIs) return asItIs;
   await refuseFaults(request);
-  return renderDrawn(request, onProgress);
+  return renderDrawn(request, report);
 }
 
 /** Loaded when a file holds a picture at all: most of what it needs takes longer to load than to use. */
-async function renderAsScan(request: RenderRequest, onProgress: (share: number) => void) {
+async function renderAsScan(request: RenderRequest, report: RenderReport) {
   const { findPageScan } = await import('./pdf-scan.ts');
   const scan = await findPageScan(request.file, request.pageNumber);
-  return scan && renderScan(scan, request, onProgress);
+  return scan && renderScan(scan, request, report);
 }
 
 async function refuseFaults({ file, pageNumber, outFolder }: RenderRequest): Promise<void> {
@@ -63,15 +60,12 @@ async function refuseFaults({ file, pageNumber, outFolder }: RenderRequest): Pro
   await refuseShortFax(file, pageNumber, `${outFolder}.fax`);
 }
 
-async function renderDrawn(
-  request: RenderRequest,
-  onProgress: (share: number) => void,
-): Promise<RenderedSheet> {
+async function renderDrawn(request: RenderRequest, report: RenderReport): Promise<RenderedSheet> {
   const raster = `${request.outFolder}.tif`;
   try {
     const drawn = await withPdf(request.file, async (document) => {
       const page = await openPage(document, request.pageNumber);
-      return drawPage(page, request, raster, (share) => onProgress(share * DRAWING_SHARE));
+      return drawPage(page, request, raster, report);
     });
     // The page's pictures are dead now, but lie outside the heap, where their size hurries no collection.
     globalThis.gc?.();
@@ -82,9 +76,9 @@ async function renderDrawn(
       drawn,
       drawn.isLineWork ? 'png' : 'jpeg',
       request.outFolder,
-      (share) => onProgress(DRAWING_SHARE + share * (1 - DRAWING_SHARE)),
+      (share) => report.progress(DRAWING_SHARE + share * (1 - DRAWING_SHARE)),
     );
-    return { widthPx, heightPx, dpi, note, ...tiles };
+    return { widthPx, heightPx, dpi, note, isDrawn: true, ...tiles };
   } finally {
     await rm(raster, { force: true });
   }
@@ -94,7 +88,7 @@ async function drawPage(
   page: PDFPageProxy,
   request: RenderRequest,
   raster: string,
-  onProgress: (share: number) => void,
+  report: RenderReport,
 ): Promise<DrawnPage> {
   const size = page.getViewport({ scale: 1 });
   takeWarnings();
@@ -104,8 +98,31 @@ async function drawPage(
   const scale = chosen.dpi / 72;
   const widthPx = Math.max(1, Math.round(size.width * scale));
   const heightPx = Math.max(1, Math.round(size.height * scale));
-  const character = await drawBands(page, scale, { widthPx, heightPx }, raster, onProgress);
+  if (widthPx * heightPx > LONG_DRAWING_PIXELS)
+    report.firstView(await drawFirstView(page, { ...chosen, widthPx, heightPx }, request.outFolder));
+  const character = await drawBands(page, scale, { widthPx, heightPx }, raster, (share) =>
+    report.progress(share * DRAWING_SHARE),
+  );
   return { ...chosen, widthPx, heightPx, ...character };
+}
+
+/** The page drawn small: what a sheet of paper held at arm's length shows. */
+async function drawFirstView(
+  page: PDFPageProxy,
+  sheet: ChosenDpi & { widthPx: number; heightPx: number },
+  outFolder: string,
+): Promise<FirstView> {
+  const { widthPx, heightPx } = firstLevelOf(sheet);
+  const scale = (sheet.dpi / 72) * (widthPx / sheet.widthPx);
+  const canvas = await drawBand(page, page.getViewport({ scale }), widthPx, heightPx);
+  const rgba = canvas.data();
+  const isLineWork = flatShare(rgba, widthPx, 4, 3) >= LINE_WORK_SHARE;
+  const image = sharp(rgba, { raw: { width: widthPx, height: heightPx, channels: 4 } }).removeAlpha();
+  const first = { ...sheet, tileFormat: isLineWork ? 'png' : 'jpeg', sourceRows: heightPx } as const;
+  const view = await writeFirstView(image, first, outFolder);
+  // Keeps the canvas alive until its pixels have been used, and gives its memory back at once.
+  canvas.width = 1;
+  return { ...view, isDrawn: true };
 }
 
 /**

@@ -7,6 +7,7 @@ import { RENDER_MEMORY_BYTES, RENDER_SECONDS } from '#shared/contract/limits.ts'
 import { residentBytes } from './process-memory.ts';
 import { RenderRefusal, refusals } from './refusal.ts';
 import type {
+  FirstView,
   ProbeResult,
   RenderAnswer,
   RenderedRendition,
@@ -26,6 +27,8 @@ export interface RenderLimits {
 export interface OrderOptions {
   signal?: AbortSignal;
   onProgress?: (share: number) => void;
+  /** For a page that takes long, and again when its scan has to be drawn after all; the folder is the caller's to move away. */
+  onFirstView?: (view: FirstView) => void;
 }
 
 /** A process that draws drawings, started when first needed and again after it had to be ended. */
@@ -112,7 +115,8 @@ class ForkedRenderProcess implements RenderProcess, RenditionProcess {
     return result;
   }
 
-  async #give(order: RenderOrder, { signal, onProgress }: OrderOptions): Promise<RenderAnswer> {
+  async #give(order: RenderOrder, options: OrderOptions): Promise<RenderAnswer> {
+    const { signal, onProgress, onFirstView } = options;
     signal?.throwIfAborted();
     const child = this.#started();
     keepsParentAlive(child, true);
@@ -132,6 +136,7 @@ class ForkedRenderProcess implements RenderProcess, RenditionProcess {
           onMessage(child, (answer) => {
             if (answer.id !== order.id) return;
             if (answer.kind === 'progress') onProgress?.(answer.share);
+            else if (answer.kind === 'firstView') onFirstView?.(answer.view);
             else settle(answer, resolve, reject);
           }),
           onExit(child, (how) => {
@@ -171,7 +176,14 @@ class ForkedRenderProcess implements RenderProcess, RenditionProcess {
       execArgv: ['--import', tsxLoader, '--import', plainPackages, '--expose-gc'],
       stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
       // Nothing of the server's environment: no database address, no secret.
-      env: { PATH: process.env.PATH, HOME: process.env.HOME, TMPDIR: process.env.TMPDIR, VIPS_WARNING: '0' },
+      env: {
+        PATH: process.env.PATH,
+        HOME: process.env.HOME,
+        TMPDIR: process.env.TMPDIR,
+        VIPS_WARNING: '0',
+        // Of the memory that libvips' threads gave back, glibc would keep a pool for each of them.
+        MALLOC_ARENA_MAX: '2',
+      },
     });
     child.on('error', () => undefined);
     for (const stream of [child.stdout, child.stderr]) if (stream) this.#readLog(stream);

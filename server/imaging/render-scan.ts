@@ -1,8 +1,9 @@
 import { rm } from 'node:fs/promises';
 import sharp, { type Sharp } from 'sharp';
+import { takesLong, writeFirstView } from './first-view.ts';
 import type { PageScan } from './pdf-scan.ts';
 import { RenderRefusal } from './refusal.ts';
-import type { RenderedSheet, RenderRequest, TileFormat } from './render-types.ts';
+import type { RenderedSheet, RenderReport, RenderRequest, TileFormat } from './render-types.ts';
 import { writeScan } from './scan-raster.ts';
 import { sampledFormat } from './tile-format.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
@@ -14,7 +15,7 @@ import { writeTilePyramid } from './tile-pyramid.ts';
 export async function renderScan(
   scan: PageScan,
   request: RenderRequest,
-  onProgress: (share: number) => void,
+  report: RenderReport,
 ): Promise<RenderedSheet | null> {
   const { outFolder } = request;
   const file = `${outFolder}.scan`;
@@ -26,14 +27,13 @@ export async function renderScan(
     const lying = scan.turns % 2 === 1;
     const widthPx = lying ? scan.heightPx : scan.widthPx;
     const heightPx = lying ? scan.widthPx : scan.heightPx;
-    const tiles = await writeTilePyramid(
-      upright(open(), scan),
-      { widthPx, heightPx },
-      format,
-      outFolder,
-      onProgress,
-    );
-    return { widthPx, heightPx, dpi: scan.dpi, note: '', ...tiles };
+    const sheet = { widthPx, heightPx, dpi: scan.dpi, note: '' };
+    if (takesLong(sheet)) {
+      const first = { ...sheet, tileFormat: format, sourceRows: scan.heightPx };
+      report.firstView(await writeFirstView(upright(open(), scan), first, outFolder));
+    }
+    const image = upright(open(), scan);
+    return { ...sheet, ...(await writeTilePyramid(image, sheet, format, outFolder, report.progress)) };
   } catch (error) {
     // Drawn by pdf.js, what is missing of the scan would be white or black and nothing would tell.
     if (error instanceof RenderRefusal) throw error;

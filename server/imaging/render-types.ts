@@ -49,6 +49,21 @@ export interface RenderedSheet {
   maxZoom: number;
   /** A sentence when the sheet was drawn reduced; empty otherwise. */
   note: string;
+  /** True for a page of vectors, whose `dpi` could have been another. */
+  isDrawn?: boolean;
+}
+
+/** The coarse levels of a sheet, to be looked at while the whole of it is being drawn. */
+export interface FirstView extends RenderedSheet {
+  /** Holds levels 0 to `readyZoom`, as the whole pyramid will. */
+  folder: string;
+  readyZoom: number;
+}
+
+/** What a rendering tells while it is under way. */
+export interface RenderReport {
+  progress(share: number): void;
+  firstView(view: FirstView): void;
 }
 
 /** A cleaned-up picture of a sheet that is to be made of its base tiles. */
@@ -70,6 +85,7 @@ export type RenderOrder =
 /** From the rendering process to the parent. */
 export type RenderAnswer =
   | { id: number; kind: 'progress'; share: number }
+  | { id: number; kind: 'firstView'; view: FirstView }
   | { id: number; kind: 'probed'; result: ProbeResult }
   | { id: number; kind: 'rendered'; result: RenderedSheet }
   | { id: number; kind: 'renditionMade'; result: RenderedRendition }

@@ -1,13 +1,14 @@
-import { setTimeout as delay } from 'node:timers/promises';
 import pg from 'pg';
 import PgBoss from 'pg-boss';
 import type { Logger } from 'pino';
 import type { EntityManager } from 'typeorm';
+import { afterCommit } from '#server/entities/after-commit.ts';
+import { type Bell, createBell } from './bell.ts';
 import { JOB_NAMES, QUEUES, RETRY_DELAY_SECONDS, RETRY_LIMIT } from './job-names.ts';
 import type { JobHandler, JobHandlers, JobName, JobsPort } from './jobs-port.ts';
 
 const SCHEMA = 'pgboss';
-/** The package polls every 2 s; a person waits for the first tile meanwhile. */
+/** How often work that another process asked for, or that was put off, is looked for; our own rings the bell. */
 const POLL_MS = 500;
 
 export interface PgBossJobsOptions {
@@ -39,6 +40,7 @@ export function createPgBossJobs({ url, role, logger }: PgBossJobsOptions): Jobs
   const stopping = new AbortController();
   const aborting = new AbortController();
   const loops: Promise<void>[] = [];
+  const bells = Object.fromEntries(JOB_NAMES.map((name) => [name, createBell()])) as Record<JobName, Bell>;
   let opened: Promise<void> | undefined;
 
   /** Once for a process; tried again by the next caller when it failed. */
@@ -73,7 +75,7 @@ export function createPgBossJobs({ url, role, logger }: PgBossJobsOptions): Jobs
         // The database is away: the job stays active in the queue and the row's lease in our table runs out.
         logger.warn({ err: error, job: name }, 'the job queue did not answer');
       }
-      await delay(POLL_MS, undefined, { signal: stopping.signal }).catch(() => {});
+      await bells[name].heard(POLL_MS, stopping.signal);
     }
   }
 
@@ -81,6 +83,7 @@ export function createPgBossJobs({ url, role, logger }: PgBossJobsOptions): Jobs
     async enqueue(manager, name, rowId, afterSeconds = 0) {
       await open();
       await wake(boss, manager, name, rowId, afterSeconds);
+      if (afterSeconds === 0) afterCommit(manager, () => bells[name].ring());
     },
     async start(handlers: JobHandlers) {
       await open();

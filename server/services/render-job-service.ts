@@ -1,4 +1,6 @@
+import { IsNull, Not } from 'typeorm';
 import { DrawingEntity, RenderJobEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
+import { SectionEntity } from '#server/entities/net-entity.ts';
 import { drawingTitle } from './drawing-title.ts';
 import { writeEvent } from './event-writer.ts';
 import type { ServiceDeps } from './service-deps.ts';
@@ -7,6 +9,8 @@ import type { ServiceDeps } from './service-deps.ts';
 export const LEASE_MS = 30_000;
 /** Runs after which a fault of the server itself is no longer waited out. */
 export const MOST_ATTEMPTS = 3;
+
+const ONLY_SMALL = 'Only a small picture of this page could be made.';
 
 /** A job this run holds. */
 export interface HeldJob {
@@ -63,6 +67,14 @@ export function createRenderJobService({
       ['drawing.failed', `${drawingTitle(job.drawing)} could not be prepared`],
     );
 
+  /** What a run before this one has entered of the same page is replaced. */
+  async function enter(job: HeldJob, sheet: NewSheet): Promise<void> {
+    const row = { ...sheet, drawingId: job.drawing.id };
+    const { affected } = await manager.update(SheetEntity, { id: sheet.id }, row);
+    if (affected === 0) await manager.insert(SheetEntity, { ...row, createdAt: clock.now() });
+    await announce(job);
+  }
+
   return {
     /** Takes the job when it waits or when the run that held it shows no sign of life; null when there is nothing to do. */
     async claim(jobId: string, runId: string): Promise<HeldJob | null> {
@@ -98,16 +110,36 @@ export function createRenderJobService({
     },
 
     async donePages(drawingId: string): Promise<Set<number>> {
-      const sheets = await manager.find(SheetEntity, { select: { pageNumber: true }, where: { drawingId } });
+      const sheets = await manager.find(SheetEntity, {
+        select: { pageNumber: true },
+        where: { drawingId, readyZoom: IsNull() },
+      });
       return new Set(sheets.map((sheet) => sheet.pageNumber));
     },
 
     /** Enters a finished sheet; the tiles are in place. False when another run has taken the job. */
     async addSheet(job: HeldJob, sheet: NewSheet, pagesDone: number): Promise<boolean> {
       if (!(await update(job, { pagesDone, pageProgress: 0, leaseUntil: leaseUntil() }))) return false;
-      await manager.insert(SheetEntity, { ...sheet, drawingId: job.drawing.id, createdAt: clock.now() });
-      await announce(job);
+      await enter(job, sheet);
       return true;
+    },
+
+    /** Enters a sheet of which only the coarse levels are in place. */
+    async addFirstView(job: HeldJob, sheet: NewSheet): Promise<void> {
+      if (await update(job, { leaseUntil: leaseUntil() })) await enter(job, sheet);
+    },
+
+    /**
+     * Takes a sheet back that was shown by its first view and turned out to be damaged. One that somebody works on
+     * already stays, and says what it is. True when its tiles can go.
+     */
+    async withdraw(sheetId: string, reason: string): Promise<boolean> {
+      const unfinished = { id: sheetId, readyZoom: Not(IsNull()) };
+      if (!(await manager.existsBy(SheetEntity, unfinished))) return false;
+      const isUsed = await manager.existsBy(SectionEntity, { sheetId });
+      if (isUsed) await manager.update(SheetEntity, unfinished, { note: `${ONLY_SMALL} ${reason}` });
+      else await manager.delete(SheetEntity, unfinished);
+      return !isUsed;
     },
 
     /** `message` names pages that were left out; empty otherwise. */

@@ -30,9 +30,13 @@ export function createLocalDiskStorage(rootFolder: string): StoragePort {
 
     async putTree(prefix, localFolder) {
       const target = path.join(root, checkedTilePrefix(prefix));
-      await rm(target, { recursive: true, force: true });
       await mkdir(path.dirname(target), { recursive: true });
+      // Aside first: deleting thousands of files takes a while, in which tiles are asked for.
+      const aside = `${target}.${process.pid}.old`;
+      await rm(aside, { recursive: true, force: true });
+      await renameIfThere(target, aside);
       await moveFolder(localFolder, target);
+      await rm(aside, { recursive: true, force: true });
     },
 
     async stat(key) {
@@ -119,6 +123,12 @@ async function syncFolder(folder: string): Promise<void> {
   } finally {
     await handle.close();
   }
+}
+
+async function renameIfThere(from: string, to: string): Promise<void> {
+  await rename(from, to).catch((error: NodeJS.ErrnoException) => {
+    if (error.code !== 'ENOENT') throw error;
+  });
 }
 
 async function moveFile(from: string, to: string): Promise<void> {

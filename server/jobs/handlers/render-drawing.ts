@@ -5,7 +5,7 @@ import type { AppDeps } from '#server/app-deps.ts';
 import { RenderRefusal } from '#server/imaging/refusal.ts';
 import { createRenderPool } from '#server/imaging/render-pool.ts';
 import { createRenderProcess, type RenderProcess } from '#server/imaging/render-process.ts';
-import type { ProbedPage, ProbeResult } from '#server/imaging/render-types.ts';
+import type { FirstView, ProbedPage, ProbeResult } from '#server/imaging/render-types.ts';
 import type { JobHandler } from '#server/jobs/jobs-port.ts';
 import { createRenderJobService, type HeldJob, LEASE_MS } from '#server/services/render-job-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
@@ -60,6 +60,8 @@ export function createRenderDrawingHandler(
 /** Another run has taken the job over; nothing of this one counts any more. */
 class LostLease extends Error {}
 
+type SheetPlace = { id: string; pageNumber: number; rendition: string };
+
 type Rows = <T>(work: (jobs: Jobs) => Promise<T>) => Promise<T>;
 
 function startRun(job: HeldJob, outer: AbortSignal, rows: Rows, deps: AppDeps, renderer: RenderProcess) {
@@ -107,20 +109,36 @@ function startRun(job: HeldJob, outer: AbortSignal, rows: Rows, deps: AppDeps, r
     await refuseFullDisk();
     const { pageNumber } = page;
     const outFolder = path.join(folder, String(pageNumber));
+    const own = { id: sheetIdOf(job.drawing.id, pageNumber), pageNumber, rendition: BASE };
+    const firstViews: Promise<void>[] = [];
     try {
       const order = { file, kind, pageNumber, outFolder };
       const onProgress = everyWhile(PROGRESS_MS, (share) => rows((jobs) => jobs.setProgress(job, share)));
-      const sheet = await renderer.renderSheet(order, { signal, onProgress });
-      const id = sheetIdOf(job.drawing.id, pageNumber);
-      await deps.storage.putTree(tilePrefix(id, BASE), outFolder);
-      const isOurs = await rows((jobs) =>
-        jobs.addSheet(job, { id, pageNumber, rendition: BASE, ...sheet }, pagesDone),
-      );
+      const onFirstView = (view: FirstView) => void firstViews.push(showFirstView(own, view));
+      const drawn = await renderer.renderSheet(order, { signal, onProgress, onFirstView });
+      await Promise.all(firstViews);
+      await deps.storage.putTree(tilePrefix(own.id, BASE), outFolder);
+      const sheet = { ...own, ...drawn, isDrawn: drawn.isDrawn ?? false, readyZoom: null };
+      const isOurs = await rows((jobs) => jobs.addSheet(job, sheet, pagesDone));
       if (!isOurs) throw new LostLease('the job has been taken over');
       return null;
     } catch (error) {
-      if (error instanceof RenderRefusal) return error;
-      throw error;
+      await Promise.all(firstViews);
+      if (!(error instanceof RenderRefusal)) throw error;
+      const isGone = await rows((jobs) => jobs.withdraw(own.id, error.message));
+      if (isGone) await deps.storage.deletePrefix(tilePrefix(own.id, BASE));
+      return error;
+    }
+  }
+
+  /** A courtesy while the whole is drawn: that it failed is no reason to stop. */
+  async function showFirstView(own: SheetPlace, { folder: from, ...view }: FirstView): Promise<void> {
+    try {
+      await deps.storage.putTree(tilePrefix(own.id, own.rendition), from);
+      const sheet = { ...own, ...view, isDrawn: view.isDrawn ?? false };
+      await rows((jobs) => jobs.addFirstView(job, sheet));
+    } catch (error) {
+      deps.logger.warn({ err: error, drawingId: job.drawing.id }, 'the first view of a sheet was not shown');
     }
   }
 
