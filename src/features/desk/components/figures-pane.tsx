@@ -48,6 +48,7 @@ export function FiguresPane({ store, netName, onDownload, onForm, onSheet }: Fig
       store={store}
       className="h-full"
       views={views}
+      onSheet={onSheet}
       onDownload={onDownload}
       onAdd={onForm === null ? null : () => onForm({ form: 'point' })}
     />

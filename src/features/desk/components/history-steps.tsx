@@ -1,5 +1,6 @@
-import { useId, useRef, useState } from 'react';
+import { useState } from 'react';
 import { useStore } from 'zustand';
+import { AnchoredList } from '#client/components/anchored-list.tsx';
 import { classNames } from '#client/components/class-names.ts';
 import { historyText as text } from '#client/text/history.ts';
 import type { DeskStore } from '../model/desk-state.ts';
@@ -17,64 +18,40 @@ interface HistoryStepsProps {
 /** A button that lists the steps by name, the newest first; pressing one takes it and all above it. */
 export function HistorySteps({ store, from, keeping }: HistoryStepsProps) {
   const steps = useStore(store, (state) => state.steps[from]);
-  const [open, setOpen] = useState(false);
-  const listId = useId();
-  const button = useRef<HTMLButtonElement>(null);
-  const list = useRef<HTMLDivElement>(null);
   const back = from === 'done';
   return (
-    <>
-      <button
-        ref={button}
-        type="button"
-        aria-label={back ? text.undoSteps : text.redoSteps}
-        title={back ? text.undoSteps : text.redoSteps}
-        aria-expanded={open}
-        disabled={steps.length === 0}
-        popoverTarget={listId}
-        className="border-0 bg-transparent px-1.5 py-1.5 text-ink-2 hover:bg-hover disabled:opacity-55 touch"
-      >
-        <svg width="9" height="9" viewBox="0 0 9 9" aria-hidden="true">
-          <path d="M1 6 4.5 2.5 8 6" fill="none" stroke="currentColor" strokeWidth="1.4" />
-        </svg>
-      </button>
-      <div
-        ref={list}
-        id={listId}
-        popover="auto"
-        role="dialog"
-        aria-label={back ? text.undoList : text.redoList}
-        className="m-0 max-h-[60dvh] w-[300px] max-w-[calc(100vw-16px)] overflow-y-auto rounded-sheet border border-ink bg-film p-0 text-ink"
-        onToggle={(event) => {
-          const shown = event.newState === 'open';
-          setOpen(shown);
-          if (shown && button.current) placeAbove(event.currentTarget, button.current);
-        }}
-      >
-        {open ? (
+    <AnchoredList
+      label={back ? text.undoSteps : text.redoSteps}
+      listLabel={back ? text.undoList : text.redoList}
+      button={<Chevron />}
+      buttonClassName="border-0 bg-transparent px-1.5 py-1.5 text-ink-2 hover:bg-hover disabled:opacity-55 touch"
+      disabled={steps.length === 0}
+      listClassName="w-[300px]"
+    >
+      {(close) => (
+        <>
           <StepList
             steps={steps.map(({ label }) => label || text.unnamed).reverse()}
             back={back}
             onTake={(count) => {
-              list.current?.hidePopover();
+              close();
               if (back) store.undo(count);
               else store.redo(count);
             }}
           />
-        ) : null}
-        {open && back && keeping ? <KeptNote keeping={keeping} /> : null}
-      </div>
-    </>
+          {back && keeping ? <KeptNote keeping={keeping} /> : null}
+        </>
+      )}
+    </AnchoredList>
   );
 }
 
-/** The list lies over everything else; it stands above its button, or below where there is more room. */
-function placeAbove(list: HTMLElement, button: HTMLElement): void {
-  const { left, top, bottom } = button.getBoundingClientRect();
-  list.style.left = `${Math.max(8, Math.min(left, window.innerWidth - list.offsetWidth - 8))}px`;
-  const above = top > window.innerHeight - bottom;
-  list.style.top = above ? 'auto' : `${bottom + 4}px`;
-  list.style.bottom = above ? `${window.innerHeight - top + 4}px` : 'auto';
+function Chevron() {
+  return (
+    <svg width="9" height="9" viewBox="0 0 9 9" aria-hidden="true">
+      <path d="M1 6 4.5 2.5 8 6" fill="none" stroke="currentColor" strokeWidth="1.4" />
+    </svg>
+  );
 }
 
 function StepList({

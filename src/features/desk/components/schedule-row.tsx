@@ -1,5 +1,6 @@
 import { classNames } from '#client/components/class-names.ts';
 import { measuredText } from '#client/text/measured.ts';
+import { scheduleViewText } from '#client/text/panes.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
@@ -7,17 +8,19 @@ import type { MeasuredReading } from '#shared/contract/reading-measured.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { MEASURED_COLOURS, measuredFigures, measuredState } from './measured-words.ts';
 import { type Edit, renamePoint, typePlace } from './schedule-edits.ts';
-import { pointFigures, pointRemark } from './schedule-rows.ts';
+import { type HideableColumn, pointFigures, pointRemark } from './schedule-rows.ts';
 import { TableNumber, TableText } from './table-inputs.tsx';
 
 const LONGEST_NAME = 120;
 const CELL = 'border-b border-rule-2 px-2 py-[3px]';
+const FIGURE = `${CELL} text-right`;
 
 interface RowProps {
   point: PointReading;
   document: FlowNetDocument;
   /** What was measured here, null when nothing was; undefined where the table has no such columns. */
   measured: MeasuredReading | null | undefined;
+  hidden: readonly HideableColumn[];
   /** The reason is said once above the table, not in every row. */
   unfinished: boolean;
   onEdit: ((edit: Edit) => void) | null;
@@ -25,6 +28,8 @@ interface RowProps {
   onSelect: ((id: string) => void) | null;
   open: boolean;
   onToggle: () => void;
+  /** Shows the point on the sheet; left out where there is none beside the table. */
+  onLook?: (() => void) | undefined;
 }
 
 /** One reading point: its name and place, edited where they stand, and its figures or the reason why there are none. */
@@ -32,17 +37,19 @@ export function ScheduleRow({
   point,
   document,
   measured,
+  hidden,
   unfinished,
   onEdit,
   selected,
   onSelect,
   open,
   onToggle,
+  onLook,
 }: RowProps) {
   const name = point.name || text.unnamed;
   return (
     <tr
-      className={classNames('group', selected ? 'bg-chosen' : 'hover:bg-hover')}
+      className={classNames('group scroll-mt-12', selected ? 'bg-chosen' : 'hover:bg-hover')}
       aria-selected={selected}
       onFocus={() => onSelect?.(point.id)}
       onClick={() => onSelect?.(point.id)}
@@ -58,10 +65,13 @@ export function ScheduleRow({
         <NameCell point={point} document={document} onEdit={onEdit} />
         <PressureOnPhone point={point} document={document} />
       </th>
-      <PlaceCells point={point} document={document} onEdit={onEdit} name={name} />
-      <FigureCells point={point} document={document} unfinished={unfinished} />
-      {measured === undefined ? null : <MeasuredCells measured={measured} document={document} />}
+      <PlaceCells point={point} document={document} onEdit={onEdit} name={name} hidden={hidden} />
+      <FigureCells point={point} document={document} unfinished={unfinished} hidden={hidden} />
+      {measured === undefined ? null : (
+        <MeasuredCells measured={measured} document={document} hidden={hidden} />
+      )}
       <td className={classNames(CELL, 'w-px text-right whitespace-nowrap')}>
+        {onLook ? <LookButton name={name} onLook={onLook} /> : null}
         <button
           type="button"
           aria-expanded={open}
@@ -73,6 +83,28 @@ export function ScheduleRow({
         </button>
       </td>
     </tr>
+  );
+}
+
+function LookButton({ name, onLook }: { name: string; onLook: () => void }) {
+  const label = scheduleViewText.showOnSheet(name);
+  return (
+    <button
+      type="button"
+      aria-label={label}
+      title={label}
+      className="touch mr-2 px-1 align-middle text-ink-2 hover:text-ink"
+      onClick={onLook}
+    >
+      <svg width="13" height="13" viewBox="0 0 13 13" aria-hidden="true">
+        <path
+          d="M6.5 0v4M6.5 9v4M0 6.5h4M9 6.5h4M6.5 3.4a3.1 3.1 0 1 1 0 6.2 3.1 3.1 0 0 1 0-6.2"
+          fill="none"
+          stroke="currentColor"
+          strokeWidth="1.2"
+        />
+      </svg>
+    </button>
   );
 }
 
@@ -107,14 +139,16 @@ function PlaceCells({
   document,
   onEdit,
   name,
-}: Pick<RowProps, 'point' | 'document' | 'onEdit'> & { name: string }) {
+  hidden,
+}: Pick<RowProps, 'point' | 'document' | 'onEdit' | 'hidden'> & { name: string }) {
+  const shows = shownOf(hidden);
   const value = document.entities[point.id]?.value;
   const figures = pointFigures(point, document);
   if (!onEdit || value?.kind !== 'readingPoint' || point.offset === null) {
     return (
       <>
-        <td className={classNames(CELL, 'text-right')}>{figures.offset}</td>
-        <td className={classNames(CELL, 'text-right')}>{figures.elevation}</td>
+        {shows('offset') ? <td className={FIGURE}>{figures.offset}</td> : null}
+        {shows('elevation') ? <td className={FIGURE}>{figures.elevation}</td> : null}
       </>
     );
   }
@@ -126,60 +160,97 @@ function PlaceCells({
   const typed = value.place.on === 'section' ? value.place : null;
   return (
     <>
-      <td className={classNames(CELL, 'text-right')}>
-        <TableNumber
-          label={text.offsetOf(name)}
-          value={typed?.offset ?? rounded(point.offset)}
-          shown={figures.offset}
-          onCommit={(offset) => offset !== null && type({ offset })}
-        />
-      </td>
-      <td className={classNames(CELL, 'text-right')}>
-        <TableNumber
-          label={text.elevationOf(name)}
-          value={typed?.elevation ?? rounded(point.elevation)}
-          shown={figures.elevation}
-          onCommit={(elevation) => elevation !== null && type({ elevation })}
-        />
-      </td>
+      {shows('offset') ? (
+        <td className={FIGURE}>
+          <TableNumber
+            label={text.offsetOf(name)}
+            value={typed?.offset ?? rounded(point.offset)}
+            shown={figures.offset}
+            onCommit={(offset) => offset !== null && type({ offset })}
+          />
+        </td>
+      ) : null}
+      {shows('elevation') ? (
+        <td className={FIGURE}>
+          <TableNumber
+            label={text.elevationOf(name)}
+            value={typed?.elevation ?? rounded(point.elevation)}
+            shown={figures.elevation}
+            onCommit={(elevation) => elevation !== null && type({ elevation })}
+          />
+        </td>
+      ) : null}
     </>
   );
 }
 
 const rounded = (value: number | null) => (value === null ? null : Number(value.toFixed(3)));
 
-function FigureCells({ point, document, unfinished }: Pick<RowProps, 'point' | 'document' | 'unfinished'>) {
+const FIGURE_COLUMNS = ['dropsLost', 'totalHead', 'pressureHead', 'porePressure'] as const;
+
+function FigureCells({
+  point,
+  document,
+  unfinished,
+  hidden,
+}: Pick<RowProps, 'point' | 'document' | 'unfinished' | 'hidden'>) {
   const figures = pointFigures(point, document);
+  const columns = FIGURE_COLUMNS.filter(shownOf(hidden));
   if (point.status === 'withheld') {
-    return (
-      <td colSpan={4} className={classNames(CELL, 'text-attention')}>
-        {unfinished ? text.unfinishedRow : pointRemark(point) || text.reading}
-      </td>
-    );
+    const reason = unfinished ? text.unfinishedRow : pointRemark(point) || text.reading;
+    return <SpanCell span={columns.length} className="text-attention" words={reason} />;
   }
-  if (point.status === 'abovePhreatic') {
-    return (
-      <>
-        <td colSpan={3} className={classNames(CELL, 'text-right text-ink-2')}>
-          {text.abovePhreatic}
-        </td>
-        <td className={classNames(CELL, 'text-right font-semibold')}>{figures.porePressure}</td>
-      </>
-    );
-  }
+  const above = point.status === 'abovePhreatic';
+  const withPressure = columns.includes('porePressure');
   return (
     <>
-      <td className={classNames(CELL, 'text-right')}>{figures.dropsLost}</td>
-      <td className={classNames(CELL, 'text-right whitespace-nowrap')}>
-        {figures.totalHead}
-        <span className="text-ink-2">{figures.totalHeadPlusMinus}</span>
-      </td>
-      <td className={classNames(CELL, 'text-right')}>{figures.pressureHead}</td>
-      <td className={classNames(CELL, 'text-right whitespace-nowrap')}>
-        <b className="font-semibold">{figures.porePressure}</b>
-        <span className="text-ink-2">{figures.porePressurePlusMinus}</span>
-        {point.findings.length > 0 ? <span className="text-attention"> ?</span> : null}
-      </td>
+      {above ? (
+        <SpanCell
+          span={columns.length - Number(withPressure)}
+          className="text-right text-ink-2"
+          words={text.abovePhreatic}
+        />
+      ) : (
+        <HeadCells figures={figures} columns={columns} />
+      )}
+      {withPressure ? (
+        <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+          <b className="font-semibold">{figures.porePressure}</b>
+          {above ? null : <span className="text-ink-2">{figures.porePressurePlusMinus}</span>}
+          {!above && point.findings.length > 0 ? <span className="text-attention"> ?</span> : null}
+        </td>
+      ) : null}
+    </>
+  );
+}
+
+/** Words in the place of figures, over the columns that are shown of them. */
+function SpanCell({ span, className, words }: { span: number; className: string; words: string }) {
+  if (span === 0) return null;
+  return (
+    <td colSpan={span} className={classNames(CELL, className)}>
+      {words}
+    </td>
+  );
+}
+
+function HeadCells({
+  figures,
+  columns,
+}: {
+  figures: ReturnType<typeof pointFigures>;
+  columns: readonly (typeof FIGURE_COLUMNS)[number][];
+}) {
+  return (
+    <>
+      {columns.includes('dropsLost') ? <td className={FIGURE}>{figures.dropsLost}</td> : null}
+      {columns.includes('totalHead') ? (
+        <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+          {figures.totalHead}
+          <span className="text-ink-2">{figures.totalHeadPlusMinus}</span>
+        </td>
+      ) : null}
+      {columns.includes('pressureHead') ? <td className={FIGURE}>{figures.pressureHead}</td> : null}
     </>
   );
 }
@@ -187,23 +258,33 @@ function FigureCells({ point, document, unfinished }: Pick<RowProps, 'point' | '
 function MeasuredCells({
   measured,
   document,
+  hidden,
 }: {
   measured: MeasuredReading | null;
   document: FlowNetDocument;
+  hidden: readonly HideableColumn[];
 }) {
-  if (measured === null) return <td colSpan={2} className={CELL} />;
+  const shows = shownOf(hidden);
+  const columns = (['measured', 'difference'] as const).filter(shows);
+  if (measured === null) return <SpanCell span={columns.length} className="" words="" />;
   const figures = measuredFigures(measured, document.unitSystem);
   const state = measuredState(measured);
   return (
     <>
-      <td className={classNames(CELL, 'text-right whitespace-nowrap')}>
-        {figures.head}
-        <span className="text-ink-2">{figures.headPlusMinus}</span>
-      </td>
-      <td className={classNames(CELL, 'text-right whitespace-nowrap', MEASURED_COLOURS[state])}>
-        {state === 'wet' ? measuredText.wetShort : figures.difference}
-        <span className="font-normal text-ink-2">{figures.differencePlusMinus}</span>
-      </td>
+      {shows('measured') ? (
+        <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+          {figures.head}
+          <span className="text-ink-2">{figures.headPlusMinus}</span>
+        </td>
+      ) : null}
+      {shows('difference') ? (
+        <td className={classNames(FIGURE, 'whitespace-nowrap', MEASURED_COLOURS[state])}>
+          {state === 'wet' ? measuredText.wetShort : figures.difference}
+          <span className="font-normal text-ink-2">{figures.differencePlusMinus}</span>
+        </td>
+      ) : null}
     </>
   );
 }
+
+const shownOf = (hidden: readonly HideableColumn[]) => (column: HideableColumn) => !hidden.includes(column);

@@ -86,6 +86,15 @@ export function scheduleColumns({ unitSystem, datum }: Units, withMeasured = fal
   ];
 }
 
+/** Columns that may be left out of the table: all but the name, by which a row is known. */
+export type HideableColumn = Exclude<ScheduleColumn['column'], 'name'>;
+
+/** Points whose name holds what was typed, whatever the case; all of them when nothing was. */
+export function pointsNamed(points: readonly PointReading[], typed: string): readonly PointReading[] {
+  const wanted = typed.trim().toLocaleLowerCase();
+  return wanted === '' ? points : points.filter(({ name }) => name.toLocaleLowerCase().includes(wanted));
+}
+
 /** A point's figures as text, with the decimals that mean something; the ± stands in its own place. */
 export function pointFigures(point: PointReading, { unitSystem }: Units) {
   const decimals = DECIMALS[unitSystem];

@@ -9,6 +9,7 @@ import type { NetReading, PointReading } from '#shared/contract/reading.ts';
 import { type Edit, removePoint } from './schedule-edits.ts';
 import { ScheduleRow } from './schedule-row.tsx';
 import {
+  type HideableColumn,
   nextSort,
   pointRemark,
   type ScheduleColumn,
@@ -20,6 +21,10 @@ import {
 interface ScheduleProps {
   document: FlowNetDocument;
   reading: NetReading;
+  /** The points shown; left out = all of the reading. */
+  points?: readonly PointReading[];
+  /** Columns left out. */
+  hidden?: readonly HideableColumn[];
   /** The order shown, held by whoever copies the table too. */
   sort: Sort;
   onSort: (sort: Sort) => void;
@@ -31,12 +36,18 @@ interface ScheduleProps {
   onMeasured?: ((id: string) => void) | undefined;
   /** Shows how a point is read; left out where there is no sheet to show it on. */
   onExplain?: ((id: string) => void) | undefined;
+  /** Brings a point into view on the sheet; left out where there is none beside the table. */
+  onLook?: ((point: PointReading) => void) | undefined;
 }
+
+const NONE: readonly HideableColumn[] = [];
 
 /** The table of reading points: sorted by its heads, edited where it stands, each row with its count in words. */
 export function Schedule({
   document,
   reading,
+  points = reading.points,
+  hidden = NONE,
   sort,
   onSort,
   onEdit,
@@ -44,14 +55,17 @@ export function Schedule({
   onSelect,
   onMeasured,
   onExplain,
+  onLook,
 }: ScheduleProps) {
   const [openId, setOpenId] = useState<string | null>(null);
   const { measured } = reading;
-  const columns = scheduleColumns(document, measured.length > 0);
+  const columns = scheduleColumns(document, measured.length > 0).filter(
+    ({ column }) => column === 'name' || !hidden.includes(column),
+  );
   return (
     <table className="w-full min-w-[700px]">
       <caption className="sr-only">{text.title}</caption>
-      <thead>
+      <thead className="sticky top-0 z-[2] bg-film">
         <tr>
           {columns.map((column) => (
             <Head
@@ -69,7 +83,7 @@ export function Schedule({
         </tr>
       </thead>
       <tbody>
-        {sortedPoints(reading.points, sort, measured).map((point) => (
+        {sortedPoints(points, sort, measured).map((point) => (
           <Fragment key={point.id}>
             <ScheduleRow
               point={point}
@@ -77,12 +91,14 @@ export function Schedule({
               measured={
                 measured.length > 0 ? (measured.find(({ id }) => id === point.id) ?? null) : undefined
               }
+              hidden={hidden}
               unfinished={reading.state === 'unfinished'}
               onEdit={onEdit}
               selected={selectedIds.includes(point.id)}
               onSelect={onSelect}
               open={openId === point.id}
               onToggle={() => setOpenId(openId === point.id ? null : point.id)}
+              onLook={onLook && point.sheetAt !== null ? () => onLook(point) : undefined}
             />
             {openId === point.id ? (
               <Explanation
