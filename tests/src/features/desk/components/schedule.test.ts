@@ -5,13 +5,16 @@ import { Schedule } from '#client/features/desk/components/schedule.tsx';
 import { typePlace } from '#client/features/desk/components/schedule-edits.ts';
 import {
   ENTERED_ORDER,
+  type HideableColumn,
   nextSort,
   pointRemark,
+  pointsNamed,
   type Sort,
   scheduleColumns,
   sortedPoints,
 } from '#client/features/desk/components/schedule-rows.ts';
 import { scheduleTsv } from '#client/features/desk/components/schedule-text.ts';
+import { parseColumns } from '#client/features/desk/components/schedule-view.tsx';
 import { readNet } from '#shared/compute/read-net.ts';
 import { type EntityOf, UNSAID } from '#shared/contract/document.ts';
 import type { PointReading } from '#shared/contract/reading.ts';
@@ -45,6 +48,14 @@ function point(name: string, changes: Partial<PointReading> = {}): PointReading 
     ...changes,
   };
 }
+
+const FIGURES: HideableColumn[] = ['dropsLost', 'totalHead', 'pressureHead', 'porePressure'];
+/** Cells of a row as they count in the table's width. */
+const cellsIn = (row: string) =>
+  [...row.matchAll(/<t[dh](?: [^>]*?colSpan="(\d+)")?/g)].reduce(
+    (sum, [, span]) => sum + Number(span ?? 1),
+    0,
+  );
 
 describe('the schedule', () => {
   it('sorts names as people count them and puts points without a figure last either way', () => {
@@ -141,6 +152,38 @@ describe('the schedule', () => {
       ['P2', 'P1', 'P10'],
     ]);
     expect(shown).toEqual(copied);
+  });
+
+  it('is narrowed to the points of a name, whatever the case', () => {
+    const points = [point('PZ-1'), point('Pz-12'), point('A3')];
+    expect(pointsNamed(points, '').map(({ name }) => name)).toEqual(['PZ-1', 'Pz-12', 'A3']);
+    expect(pointsNamed(points, ' pz-1').map(({ name }) => name)).toEqual(['PZ-1', 'Pz-12']);
+    expect(pointsNamed(points, 'z-9')).toEqual([]);
+  });
+
+  it('has as many cells in each row as heads, whatever columns are left out', () => {
+    const document = documentWith({});
+    const points = [
+      point('P1'),
+      point('P2', { status: 'withheld', reason: null }),
+      point('P3', { status: 'abovePhreatic' }),
+    ];
+    const reading = { ...readNet(document), points };
+    const nothing = { onSort: () => {}, onEdit: null, selectedIds: [], onSelect: null };
+    for (const hidden of [[], ['offset', 'totalHead'], ['porePressure'], FIGURES] as HideableColumn[][]) {
+      const html = renderToStaticMarkup(
+        createElement(Schedule, { document, reading, sort: ENTERED_ORDER, hidden, ...nothing }),
+      );
+      const [heads, ...rows] = html.split('<tr').slice(1).map(cellsIn);
+      expect(rows, hidden.join()).toEqual(rows.map(() => heads));
+      expect(heads).toBe(8 - hidden.length);
+    }
+  });
+
+  it('forgets columns that were kept by a page which knew others', () => {
+    expect(parseColumns(null)).toEqual([]);
+    expect(parseColumns('["offset","of tomorrow"]')).toEqual([]);
+    expect(parseColumns('["offset"]')).toEqual(['offset']);
   });
 
   it('makes a clicked point a typed one when a coordinate is typed, the other kept as read', () => {

@@ -63,8 +63,13 @@ async function open(values: Record<string, DocumentEntity>, send: SendBatch, ove
   const saving = startSaving({ desk, storage, owner, send, kept, newClientId, now: () => 42, ...over });
   return { desk, saving };
 }
-const move = (desk: ReturnType<typeof createDeskStore>, x: number) =>
-  desk.run('moved a vertex', [{ op: 'put', entityId: LINE_A, value: lineTo(x) }]);
+const put = (x: number) => ({ op: 'put' as const, entityId: LINE_A, value: lineTo(x) });
+/** Lets time pass on the fake clock and the browser's storage, which has a time of its own, come to rest. */
+async function passMs(ms: number): Promise<void> {
+  await vi.advanceTimersByTimeAsync(ms);
+  for (let turn = 0; turn < 12; turn += 1) await new Promise((resolve) => setImmediate(resolve));
+}
+const move = (desk: ReturnType<typeof createDeskStore>, x: number) => desk.run('moved a vertex', [put(x)]);
 
 describe('saving', () => {
   it('sends a change by itself within two seconds and says when it was saved', async () => {
@@ -129,6 +134,37 @@ describe('saving', () => {
     expect(server.received.map((batch) => batch.seq)).toEqual([1, 1, 2]);
     expect(server.held.get(LINE_A)).toEqual({ version: 3, value: lineTo(3) });
     expect(saving.state.getState().conflicts).toEqual([]);
+  });
+
+  it('gives nothing up in an hour without a network, and sends it by itself when that is back', async () => {
+    const server = serverHolding({ [LINE_A]: lineTo(1) });
+    let network = false;
+    let signedIn = false;
+    let tries = 0;
+    const { desk, saving } = await open({ [LINE_A]: lineTo(1) }, async (batch) => {
+      tries += 1;
+      if (!network) return { kind: 'failed', failure: 'offline', detail: '' };
+      return signedIn ? server.answer(batch) : { kind: 'failed', failure: 'signedOut', detail: '' };
+    });
+    for (let minute = 0; minute < 60; minute += 1) {
+      if (minute % 10 === 0) desk.run(`act ${minute}`, [put(minute + 2)]);
+      for (let part = 0; part < 4; part += 1) await passMs(15_000);
+    }
+    expect(saveStateOf(saving.state.getState())).toMatchObject({ failure: 'offline', kept: true });
+    expect(saving.state.getState().unsent).toBe(6);
+    // At first soon, then every half minute, give or take a quarter.
+    expect(tries).toBeGreaterThan(80);
+    expect(tries).toBeLessThan(180);
+    network = true;
+    for (let part = 0; part < 4; part += 1) await passMs(15_000);
+    expect(saveStateOf(saving.state.getState())).toMatchObject({ failure: 'signedOut', kept: true });
+    expect(server.received).toEqual([]);
+    signedIn = true;
+    await saving.flush();
+    expect(server.received.map(({ seq, label }) => [seq, label])).toEqual(
+      [0, 10, 20, 30, 40, 50].map((minute, i) => [i + 1, `act ${minute}`]),
+    );
+    expect(server.held.get(LINE_A)).toEqual({ version: 7, value: lineTo(52) });
   });
 
   it('waits for the person to sign in again and then goes on', async () => {
