@@ -22,7 +22,7 @@ const INKED_NEAR = 8;
 
 /**
  * The crossing of two drawn straight lines that is nearest to a place, to a fraction of a pixel: crossings, corners and
- * T-junctions alike. `about`: the place, in the window's frame (base-raster pixels from its corner); `reach`: how far
+ * T-junctions alike. Of several the nearer is taken, and that of the longer lines. `about`: the place, in the window's frame (base-raster pixels from its corner); `reach`: how far
  * off the crossing may be. Lines are found as the straight lines near the place that carry most ink (Hough 1962, in the
  * normal form of Duda and Hart 1972), each is fitted to the middle of its stroke, and two are crossed. Null where no two
  * lines that meet at 20° or more cross within reach.
@@ -94,21 +94,27 @@ function angleBetween(a: NormalLine, b: NormalLine): number {
   return Math.asin(Math.min(1, Math.abs(Math.sin(a.phi - b.phi))));
 }
 
+/** Strokes that carry ink nowhere but at letters count as so much of the reach further off. */
+const FAINT_COST = 0.6;
+
 function nearestCrossing(
   strokes: readonly StraightStroke[],
   about: Place,
   reach: number,
 ): StrokeCrossing | null {
   let nearest: StrokeCrossing | null = null;
-  let least = reach;
+  let least = Number.POSITIVE_INFINITY;
   strokes.forEach((a, i) => {
     for (const b of strokes.slice(i + 1)) {
       const angle = angleBetween(a, b);
       if (angle < LEAST_ANGLE) continue;
       const at = meetingOf(a, b);
       const far = Math.hypot(at[0] - about[0], at[1] - about[1]);
-      if (far > least || !isInkedNear(a, at) || !isInkedNear(b, at)) continue;
-      least = far;
+      if (far > reach || !isInkedNear(a, at) || !isInkedNear(b, at)) continue;
+      const weaker = Math.min(a.inked.length, b.inked.length) / (2 * STROKE_RADIUS + 1);
+      const cost = far + reach * FAINT_COST * (1 - weaker);
+      if (cost >= least) continue;
+      least = cost;
       nearest = { at, angleDeg: (angle * 180) / Math.PI };
     }
   });

@@ -17,8 +17,12 @@ const CLOSE_REACH = 2;
 const MOST_HALF_WIDTH = 10;
 const STEP = 0.5;
 const LEAST_PLACES = 16;
-/** Greatest median departure of the middles from their line: letters and bent lines depart by more. */
-const MOST_DEPARTURE = 0.8;
+/** Middles of one stroke depart from their line by less, pixels: a ragged print wavers by half a pixel. */
+const AGREED_PX = 1;
+/** The line looked along is already nearly that of the stroke. */
+const MOST_SLOPE = 0.15;
+/** Middles of which all pairs are tried. */
+const PROBES = 24;
 
 type Middle = { readonly t: number; readonly across: number; readonly width: number };
 
@@ -26,24 +30,21 @@ type Middle = { readonly t: number; readonly across: number; readonly width: num
  * The stroke along a line, its centre line fitted to a fraction of a pixel; null where there is none that is straight.
  * Every pixel along the line the ink is walked to both sides until it falls to half: the middle of what lies between is
  * one place of the centre line, and where it does not fall, as in the crossing with another stroke, there is none. A line
- * is fitted to the middles by least squares after those far off the others were left out, three times over. `radius`:
+ * is fitted by least squares to the middles that agree, three times over, each time along the line found before. `radius`:
  * half the length looked at. Pixels of the map's frame, pixel middles at + 0.5. Own derivation.
  */
 export function straightStroke(map: InkMap, start: NormalLine, radius: number): StraightStroke | null {
   let line = start;
-  let middles: Middle[] = [];
+  let agreed: Middle[] = [];
   for (const reach of [LOOSE_REACH, CLOSE_REACH, CLOSE_REACH]) {
-    middles = ofOneWidth(middlesAlong(map, line, radius, reach));
-    if (middles.length < LEAST_PLACES) return null;
-    const fit = fittedLine(middles);
+    const fit = fittedLine(ofOneWidth(middlesAlong(map, line, radius, reach)));
+    if (fit === null) return null;
     // Turned by the slope about the foot of its normal.
     const turn = Math.atan(fit.slope);
     line = { about: line.about, phi: line.phi - turn, rho: (line.rho + fit.shift) * Math.cos(turn) };
+    agreed = fit.agreed;
   }
-  const fit = fittedLine(middles);
-  const departure = medianOf(middles.map(({ t, across }) => Math.abs(across - fit.shift - fit.slope * t)));
-  if (departure > MOST_DEPARTURE) return null;
-  return { ...line, widthPx: medianOf(middles.map(({ width }) => width)), inked: middles.map(({ t }) => t) };
+  return { ...line, widthPx: medianOf(agreed.map(({ width }) => width)), inked: agreed.map(({ t }) => t) };
 }
 
 function middlesAlong(map: InkMap, { about, phi, rho }: NormalLine, radius: number, reach: number): Middle[] {
@@ -101,19 +102,45 @@ function ofOneWidth(middles: readonly Middle[]): Middle[] {
   return middles.filter(({ width }) => Math.abs(width - usual) <= 0.5 * usual + 1);
 }
 
-/** across = shift + slope·t by least squares, over the places within three median departures of the line before. */
-function fittedLine(middles: readonly Middle[]): { shift: number; slope: number } {
-  let kept = middles;
-  let fit = leastSquares(kept);
-  for (let round = 0; round < 3; round += 1) {
-    const departures = middles.map(({ t, across }) => Math.abs(across - fit.shift - fit.slope * t));
-    const bound = 3 * Math.max(0.15, medianOf(departures));
-    const near = middles.filter((_, i) => departures[i]! <= bound);
-    if (near.length < LEAST_PLACES / 2) break;
-    kept = near;
-    fit = leastSquares(kept);
+/**
+ * The middles that lie on one line: of the lines through two of them that is taken from which most others depart by less
+ * than a pixel, so that letters beside a stroke that ends do not turn it (random sample consensus after Fischler and
+ * Bolles 1981, over all pairs of every few middles instead of random ones).
+ */
+function agreeing(middles: readonly Middle[]): Middle[] {
+  const step = Math.max(1, Math.floor(middles.length / PROBES));
+  let best: Middle[] = [];
+  for (let i = 0; i < middles.length; i += step) {
+    for (let j = i + step; j < middles.length; j += step) {
+      const [a, b] = [middles[i]!, middles[j]!];
+      if (b.t - a.t < LEAST_PLACES) continue;
+      const slope = (b.across - a.across) / (b.t - a.t);
+      if (Math.abs(slope) > MOST_SLOPE) continue;
+      const near = middles.filter(
+        ({ t, across }) => Math.abs(across - a.across - slope * (t - a.t)) < AGREED_PX,
+      );
+      if (near.length > best.length) best = near;
+    }
   }
-  return fit;
+  return best;
+}
+
+/**
+ * across = shift + slope·t by least squares over the middles that agree, those left out that are further off than three
+ * median departures; null where too few agree.
+ */
+function fittedLine(middles: readonly Middle[]): { shift: number; slope: number; agreed: Middle[] } | null {
+  let agreed = agreeing(middles);
+  if (agreed.length < LEAST_PLACES) return null;
+  for (let round = 0; round < 3; round += 1) {
+    const fit = leastSquares(agreed);
+    const off = (middle: Middle) => Math.abs(middle.across - fit.shift - fit.slope * middle.t);
+    const bound = 3 * Math.max(0.15, medianOf(agreed.map(off)));
+    const near = agreed.filter((middle) => off(middle) <= bound);
+    if (near.length < LEAST_PLACES) break;
+    agreed = near;
+  }
+  return { ...leastSquares(agreed), agreed };
 }
 
 function leastSquares(middles: readonly Middle[]): { shift: number; slope: number } {
