@@ -189,8 +189,9 @@ function lineTable(document: FlowNetDocument, reading: NetReading): SheetBlock {
     rows: reading.lines.map((line) => {
       const traced = lines.get(line.id);
       const kind = traced ? LINE_NAMES[traced.line] : 'line';
+      const adopted = traced?.origin === 'adopted' ? ', adopted' : '';
       return [
-        traced?.name ? `${traced.name} (${kind})` : kind,
+        `${traced?.name ? `${traced.name} (${kind})` : kind}${adopted}`,
         plainText(line.drops),
         fixedText(line.head, 2),
         sources[line.source],

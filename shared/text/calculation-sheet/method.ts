@@ -1,4 +1,5 @@
-import type { SheetChapter, SheetSource } from './content.ts';
+import { entitiesOf } from '#shared/contract/document.ts';
+import type { SheetBlock, SheetChapter, SheetSource } from './content.ts';
 import { lowered } from './rich-text.ts';
 
 const [nd, nf, kh, kv, gw, ic, gs] = [
@@ -11,8 +12,18 @@ const [nd, nf, kh, kv, gw, ic, gs] = [
   `γ${lowered('sat')}`,
 ];
 
+/** That lines were not traced but adopted, which figures then agree with what by construction. */
+function adoptedLines({ document }: SheetSource): SheetBlock[] {
+  const count = entitiesOf(document, 'line').filter(({ value }) => value.origin === 'adopted').length;
+  if (count === 0) return [];
+  const lines = count === 1 ? 'One line of the net was' : `${count} lines of the net were`;
+  const text = `${lines} adopted from the computed net of the independent solution. Figures read from adopted lines agree with that solution by construction, and are no check of it.`;
+  return [{ kind: 'paragraph', text }];
+}
+
 /** How the figures come about: formulas with their symbols, and the points' own explanations. */
-export function methodChapter({ reading }: SheetSource): SheetChapter {
+export function methodChapter(source: SheetSource): SheetChapter {
+  const { reading } = source;
   const explained = reading.points.filter((point) => point.explanation !== '');
   return {
     id: 'method',
@@ -22,6 +33,7 @@ export function methodChapter({ reading }: SheetSource): SheetChapter {
         kind: 'paragraph',
         text: 'The lines of the net were traced on the scan and put to scale by the known points. The head of each equipotential follows from its count of drops. Between two neighbouring lines the head is that of the field which takes their heads on them; the hand rule, by the ratio of the distances to both lines, stands beside it as a check.',
       },
+      ...adoptedLines(source),
       {
         kind: 'list',
         items: [

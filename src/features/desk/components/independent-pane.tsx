@@ -7,8 +7,10 @@ import type { DifferencePicture } from '#shared/compute/beside/difference-pictur
 import { STEPS } from '#shared/compute/beside/difference-steps.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
+import { isSolvedAlike } from '../model/adopt-lines.ts';
 import type { DeskChecks, IndependentResult, IndependentState } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import { AdoptLines } from './adopt-lines.tsx';
 import { FormPane } from './form-pane.tsx';
 import { ExitTable, HeadTable, SeepageTable } from './independent-tables.tsx';
 import { Aside, MarginSection } from './margin-section.tsx';
@@ -25,6 +27,8 @@ interface IndependentPaneProps {
 export function IndependentPane({ store, checks, onClose, onSheet }: IndependentPaneProps) {
   const { independent, result } = useStore(checks);
   const revision = useStore(store, (state) => state.documentRevision);
+  const document = useStore(store, (state) => state.document);
+  const current = result !== null && isSolvedAlike(result.document, document, result.beside.usesPhreaticLine);
   const lookAt = (at: SheetPoint) => {
     store.lookAt(at);
     onSheet();
@@ -36,7 +40,7 @@ export function IndependentPane({ store, checks, onClose, onSheet }: Independent
       {result && result.of !== revision ? (
         <p className="m-0 bg-doubt p-2 text-attention">{text.outOfDate}</p>
       ) : null}
-      {result ? <Result result={result} store={store} checks={checks} onPlace={lookAt} /> : null}
+      {result ? <Result {...{ result, store, checks, current }} onPlace={lookAt} /> : null}
     </FormPane>
   );
 }
@@ -92,14 +96,17 @@ interface ResultProps {
   result: IndependentResult;
   store: DeskStore;
   checks: DeskChecks;
+  /** False when the net has changed since. */
+  current: boolean;
   onPlace: (at: SheetPoint) => void;
 }
 
-function Result({ result: { beside }, store, checks, onPlace }: ResultProps) {
+function Result({ result: { beside }, store, checks, current, onPlace }: ResultProps) {
   const document = useStore(store, (state) => state.document);
   return (
     <>
       <Switches beside={beside} checks={checks} unit={unitNames(document.unitSystem).length} />
+      <AdoptLines net={beside.net} store={store} current={current} />
       <MarginSection title={text.heads}>
         <HeadTable comparison={beside.comparison} document={document} />
       </MarginSection>

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { Button } from '#client/components/button.tsx';
 import { fixedText, plainText } from '#client/lib/figures.ts';
+import { adoptionText } from '#client/text/adoption.ts';
 import { lineText as text, waterText } from '#client/text/desk-forms.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
@@ -33,6 +34,7 @@ export function LineForm({ lineId, ...form }: DeskFormProps & { lineId: string }
           </Button>
         </div>
       ) : null}
+      {value.origin === 'adopted' ? <p className="m-0 text-ink-2">{adoptionText.ofLine}</p> : null}
       <FormFindings findings={findings} />
       <Choice
         label={text.kind}

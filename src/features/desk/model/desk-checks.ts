@@ -1,7 +1,7 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import { independentText as text } from '#client/text/independent.ts';
 import type { BesideSolution } from '#shared/compute/beside/beside-solution.ts';
-import type { SheetPoint } from '#shared/contract/document.ts';
+import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { type AskedWorker, createAsked } from './asked-worker.ts';
 import { computedNetGuides, differenceGuides, explanationGuides, netCheckGuides } from './check-guides.ts';
@@ -17,7 +17,11 @@ export type IndependentState =
   | { readonly state: 'failed'; readonly text: string; readonly at: SheetPoint | null };
 
 /** A solution and the change of the document that it is of; older than the document it is out of date. */
-export type IndependentResult = { readonly beside: BesideSolution; readonly of: number };
+export type IndependentResult = {
+  readonly beside: BesideSolution;
+  readonly of: number;
+  readonly document: FlowNetDocument;
+};
 
 /** Whether the ways by which a point is read are drawn over the sheet; `none`: there are none to draw. */
 export type WaysState = 'working' | 'shown' | 'none' | 'failed';
@@ -77,7 +81,7 @@ const NOTHING_YET: ChecksState = {
  */
 export function createDeskChecks(store: DeskStore, workers: CheckWorkers = WORKERS): DeskChecks {
   const checks = createStore<ChecksState>(() => NOTHING_YET);
-  let askedOf = 0;
+  let asked = store.getState();
   const fail = (said: string, at: SheetPoint | null = null) =>
     checks.setState({ independent: { state: 'failed', text: said, at } });
   const solver = createAsked<IndependentQuestion, IndependentAnswer>({
@@ -87,7 +91,14 @@ export function createDeskChecks(store: DeskStore, workers: CheckWorkers = WORKE
     onAnswer(answer) {
       if (answer.state === 'working') return checks.setState({ independent: answer });
       if (answer.state === 'failed') return fail(answer.text, answer.at);
-      checks.setState({ independent: { state: 'none' }, result: { beside: answer.beside, of: askedOf } });
+      checks.setState({
+        independent: { state: 'none' },
+        result: {
+          beside: answer.beside,
+          of: asked.documentRevision,
+          document: asked.document,
+        },
+      });
     },
   });
 
@@ -134,8 +145,8 @@ export function createDeskChecks(store: DeskStore, workers: CheckWorkers = WORKE
     showNet: (netShown) => checks.setState({ netShown }),
     showDifferences: (differencesShown) => checks.setState({ differencesShown }),
     solve() {
-      const { document, documentRevision, reading, readingOf } = store.getState();
-      askedOf = documentRevision;
+      asked = store.getState();
+      const { document, documentRevision, reading, readingOf } = asked;
       checks.setState({ independent: { state: 'working', stage: 'outline' } });
       solver.ask({ document, reading: readingOf === documentRevision ? reading : null });
     },

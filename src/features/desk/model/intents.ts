@@ -9,4 +9,6 @@ export type DeskIntent =
   | { type: 'openMeasured'; id: string }
   | { type: 'openReading'; id: string }
   | { type: 'openLine'; id: string }
-  | { type: 'openWaterLevels' };
+  | { type: 'openWaterLevels' }
+  /** A line of the computed net was clicked, by its guide. */
+  | { type: 'pickComputedLine'; guideId: string };

@@ -11,7 +11,7 @@ export const COLOURS = {
   attention: '#9a6100',
 } as const;
 
-export type EndMark = 'none' | 'bar' | 'dot' | 'ring' | 'level';
+export type EndMark = 'none' | 'bar' | 'dot' | 'ring' | 'level' | 'square';
 
 /** How a kind of line looks, in screen pixels: kinds differ by dash and end mark as well as by colour. */
 export type LineLook = {
@@ -39,9 +39,10 @@ export function lookOf(kind: LineKind): LineLook {
   return LOOKS[kind];
 }
 
-/** A line by its origin: what is only guessed is drawn of single dots, open at its ends. */
+/** A line by its origin: what is only guessed is drawn of single dots, open at its ends; what was adopted ends in squares. */
 export function tracedLook(kind: LineKind, origin: TracedLine['origin']): LineLook {
-  return origin === 'guessed' ? { ...LOOKS[kind], dashPx: [2, 7], end: 'ring' } : LOOKS[kind];
+  if (origin === 'guessed') return { ...LOOKS[kind], dashPx: [2, 7], end: 'ring' };
+  return origin === 'adopted' ? { ...LOOKS[kind], end: 'square' } : LOOKS[kind];
 }
 
 /** A line that is still being drawn: of its kind's colour, finely dashed and open at its ends. */

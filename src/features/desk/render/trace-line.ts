@@ -157,6 +157,12 @@ function endMark(
     context.closePath();
     context.lineWidth = 1.4 * px;
     context.stroke();
+  } else if (mark === 'square') {
+    context.rect(at[0] - 3.2 * px, at[1] - 3.2 * px, 6.4 * px, 6.4 * px);
+    context.lineWidth = 1.4 * px;
+    context.fillStyle = COLOURS.film;
+    context.fill();
+    context.stroke();
   } else {
     context.arc(at[0], at[1], 3 * px, 0, 2 * Math.PI);
     context.lineWidth = 1.4 * px;

@@ -13,6 +13,7 @@ import { answerEdit, removeChosen } from './edit-step.ts';
 import { chosenThings } from './edit-things.ts';
 import { withoutPoint, withPointInserted } from './line-points.ts';
 import { type Picked, pickAt, reachOf } from './pick.ts';
+import { computedLineAt } from './pick-guide.ts';
 import {
   type Modifiers,
   rest,
@@ -77,12 +78,20 @@ function clicked(event: Extract<ToolEvent, { type: 'click' }>, context: ToolCont
   const inserted = event.count > 1 ? insertAt(event, context) : null;
   if (inserted !== null) return inserted;
   const picked = pickAt(context, event.at);
-  if (picked === null) return rest({ do: 'select', selection: NO_SELECTION });
+  if (picked === null) return pickedNothing(event.at, context);
   if (picked.kind === 'note') return rest({ do: 'intent', intent: { type: 'openNote', noteId: picked.id } });
   if (event.count > 1) return rest(...opened(picked));
   // A click on a vertex of the chosen line has chosen that vertex already when it was pressed.
   if (context.selection.kind === picked.kind && context.selection.ids.includes(picked.id)) return rest();
   return rest({ do: 'select', selection: selectOne(picked.kind, picked.id) });
+}
+
+/** Bare sheet lays down what was chosen; a line of the computed net there can be adopted. */
+function pickedNothing(at: SheetPx, context: ToolContext): ToolStep {
+  const guideId = computedLineAt(context, at);
+  const pick: ToolCommand[] =
+    guideId === null ? [] : [{ do: 'intent', intent: { type: 'pickComputedLine', guideId } }];
+  return rest({ do: 'select', selection: NO_SELECTION }, ...pick);
 }
 
 function opened(picked: Exclude<Picked, { kind: 'note' }>): ToolCommand[] {

@@ -65,6 +65,7 @@ export function createToolHost(store: DeskStore, ink: InkClient | null = null): 
       readOnly: state.readOnly,
       way: drawingWayChoice.getState().way,
       clicked,
+      guides: state.guides,
       inkLook: ink?.newest() ?? null,
       map: mapOf(document),
       newId: store.newId,

@@ -7,6 +7,7 @@ import type { ClickedPlace, ClickedPlaces } from '../model/clicked-places.ts';
 import type { Draft, HideableKind } from '../model/desk-state.ts';
 import type { LocalOp } from '../model/document-ops.ts';
 import type { DrawingWay } from '../model/drawing-way.ts';
+import type { GuidesByOwner } from '../model/guides.ts';
 import type { InkLook, InkReach } from '../model/ink-client.ts';
 import type { DeskIntent } from '../model/intents.ts';
 import type { PendingEdit } from '../model/pending-edit.ts';
@@ -98,6 +99,8 @@ export type ToolContext = {
   /** How lines come about between one click and the next. */
   readonly way: DrawingWay;
   readonly clicked: Pick<ClickedPlaces, 'among'>;
+  /** What is shown over the sheet besides the net. */
+  readonly guides: GuidesByOwner;
   /** The newest look at where the ink runs; null before the first. */
   readonly inkLook: InkLook | null;
   /** Screen pixels per sheet pixel. */
