@@ -30,8 +30,10 @@ import { AppFrame } from '../app-frame.tsx';
 import { DeskGrid } from './desk-grid.tsx';
 import { DeskTitleBlock } from './desk-title-block.tsx';
 import { NetNotes } from './net-notes.tsx';
+import { pictureFactsOf } from './picture-facts.ts';
 import { RevisionsPane } from './revisions-pane.tsx';
 import { SendForChecking } from './send-for-checking.tsx';
+import { SheetUnderWay } from './sheet-under-way.tsx';
 import { useDeskLive } from './use-desk-live.ts';
 import { useDeskNotes } from './use-desk-notes.ts';
 import { useDeskPresence } from './use-desk-presence.ts';
@@ -116,6 +118,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
           lines={
             <>
               {readOnly ? <ReadOnlyLine reason={readOnly} onTakeOver={takeOver} /> : null}
+              <SheetUnderWay detail={detail} />
               <StoreNotice store={store} />
               {narrow && pane === 'sheet' ? (
                 <ChosenLineBar
@@ -134,6 +137,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
               notes={notes.balloons}
               label={text.sheetLabel(sectionName, drawingName)}
               className="min-h-0 flex-1"
+              picture={() => pictureFactsOf(detail, session, person, drawingName)}
             />
           }
           schedule={

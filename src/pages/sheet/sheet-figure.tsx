@@ -91,9 +91,9 @@ function Label({ at, unit, colour, text }: { at: SheetPoint; unit: number; colou
 
 /** The tiles of the coarsest level that is fine enough, as far as they meet the part that is shown. */
 function Tiles({ sheet, crop }: { sheet: SheetDto; crop: SectionFigure['crop'] }) {
-  const { rendition, tileSizePx, maxZoom } = sheet.tiles;
-  const levels = Array.from({ length: maxZoom + 1 }, (_, level) => level);
-  const zoom = levels.find((level) => crop[2] / 2 ** (maxZoom - level) >= WANTED_PX) ?? maxZoom;
+  const { rendition, tileSizePx, maxZoom, readyZoom = maxZoom } = sheet.tiles;
+  const levels = Array.from({ length: readyZoom + 1 }, (_, level) => level);
+  const zoom = levels.find((level) => crop[2] / 2 ** (maxZoom - level) >= WANTED_PX) ?? readyZoom;
   const size = tileSizePx * 2 ** (maxZoom - zoom);
   const range = (from: number, length: number, most: number) => {
     const first = Math.floor(from / size);

@@ -1,8 +1,9 @@
 import type { SheetDto } from '#shared/contract/drawings.ts';
-import type { SheetFrame } from '../model/viewport.ts';
+import type { SheetFrame, SheetSize } from '../model/viewport.ts';
 
 export type Tile = { readonly z: number; readonly x: number; readonly y: number };
-export type TiledSheet = Pick<SheetDto, 'widthPx' | 'heightPx' | 'tiles'>;
+/** A raster in tiles; all frames here are in its pixels. */
+export type TiledSheet = SheetSize & Pick<SheetDto, 'tiles'>;
 
 /** How much smaller than the screen's own pixels a level may be before the next larger one is taken, in levels. */
 const SOFTNESS = 0.2;
@@ -16,10 +17,11 @@ export function levelScale(sheet: TiledSheet, z: number): number {
   return 2 ** (z - sheet.tiles.maxZoom);
 }
 
-/** The level that is sharp at so many device pixels per sheet pixel, and no larger than needed. */
+/** The level that is sharp at so many device pixels per sheet pixel, and no larger than needed; the finest there is. */
 export function levelFor(sheet: TiledSheet, devicePxPerSheetPx: number): number {
   const exact = sheet.tiles.maxZoom + Math.log2(devicePxPerSheetPx);
-  return Math.min(sheet.tiles.maxZoom, Math.max(0, Math.ceil(exact - SOFTNESS)));
+  const { maxZoom, readyZoom = maxZoom } = sheet.tiles;
+  return Math.min(readyZoom, Math.max(0, Math.ceil(exact - SOFTNESS)));
 }
 
 /** What a tile shows, `[left, top, width, height]` in sheet pixels; not cut at the sheet's edge. */

@@ -35,7 +35,7 @@ export function DrawingEntry({ drawing }: { drawing: DrawingDto }) {
         </h3>
         <span className="ml-2.5 text-ink-2">{drawingFacts(drawing)}</span>
         <JobProgress drawing={drawing} />
-        {drawing.job.state === 'done' ? <SectionRows drawing={drawing} /> : null}
+        {drawing.sheets.length > 0 ? <SectionRows drawing={drawing} /> : null}
       </div>
     </li>
   );

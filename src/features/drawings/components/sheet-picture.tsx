@@ -5,11 +5,11 @@ import type { SheetDto } from '#shared/contract/drawings.ts';
 /** Pixels across the picture needs to look sharp on a wide screen with two pixels to the point. */
 const WANTED_WIDTH_PX = 1600;
 
-/** The lowest level that is wide enough; the full size when none is. */
+/** The lowest level that is wide enough; the finest there is when none is. */
 export function levelFor(sheet: SheetDto, wantedPx = WANTED_WIDTH_PX): number {
-  const { maxZoom } = sheet.tiles;
+  const { maxZoom, readyZoom = maxZoom } = sheet.tiles;
   const missing = Math.floor(Math.log2(Math.max(1, sheet.widthPx / wantedPx)));
-  return Math.max(0, maxZoom - missing);
+  return Math.min(readyZoom, Math.max(0, maxZoom - missing));
 }
 
 interface Tile {

@@ -22,6 +22,15 @@ describe('the grid of tiles', () => {
     expect(levelFor(sheet, 1e-6)).toBe(0);
   });
 
+  it('takes the finest level there is while the sheet is being prepared', () => {
+    const early = { ...sheet, tiles: { ...sheet.tiles, readyZoom: 3 } };
+    expect(levelFor(early, 1)).toBe(3);
+    expect(levelFor(early, 0.5)).toBe(3);
+    expect(levelFor(early, 0.1)).toBe(levelFor(sheet, 0.1));
+    // Levels are numbered as in the whole sheet, so that what stands in for a tile lies where the tile will.
+    expect(levelScale(early, 3)).toBe(1 / 4);
+  });
+
   it('is never coarser than the screen shows by more than a seventh', () => {
     for (let zoom = 0.02; zoom < 1; zoom *= 1.03) {
       expect(levelScale(sheet, levelFor(sheet, zoom)) / zoom).toBeGreaterThan(1 / 1.16);

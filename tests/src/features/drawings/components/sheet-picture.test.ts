@@ -23,6 +23,12 @@ describe('the picture of a whole sheet', () => {
     expect(levelFor(sheet(9933, 7016, 5))).toBe(3);
   });
 
+  it('takes the finest level there is while the sheet is being prepared', () => {
+    const early = sheet(9933, 7016, 5);
+    early.tiles.readyZoom = 2;
+    expect(levelFor(early)).toBe(2);
+  });
+
   it('covers the sheet with its tiles exactly', () => {
     const tiles = tilesOf(sheet(9933, 7016, 5));
     const sum = (part: 'width' | 'height', row: string) =>
