@@ -121,10 +121,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
               <SheetUnderWay detail={detail} />
               <StoreNotice store={store} />
               {narrow && pane === 'sheet' ? (
-                <ChosenLineBar
-                  store={store}
-                  onOpen={(lineId) => show({ shows: 'form', form: { form: 'line', lineId } })}
-                />
+                <ChosenLineBar store={store} onOpen={(form) => show({ shows: 'form', form })} />
               ) : null}
             </>
           }

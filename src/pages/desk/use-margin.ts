@@ -104,19 +104,24 @@ function formFor(state: DeskState, before: DeskState): MarginForm | null {
   if (state.tool === 'knownPoint' && before.tool !== 'knownPoint') return { form: 'setOut' };
   const id = chosen(state);
   if (id === null || id === chosen(before)) return null;
+  if (state.selection.kind === 'several') return { form: 'several' };
   if (state.selection.kind === 'line') return { form: 'line', lineId: id };
   // While points are being placed one after the other nothing opens.
   return state.tool === 'readingPoint' ? null : { form: 'reading', pointId: id, byChoice: true };
 }
 
-/** The one line or reading point that is chosen. */
+/** The one line or reading point that is chosen, or that several things are. */
 function chosen({ selection }: DeskState): string | null {
+  if (selection.kind === 'several') return selection.kind;
   const opens = selection.kind === 'line' || selection.kind === 'readingPoint';
   return opens && selection.ids.length === 1 ? (selection.ids[0] ?? null) : null;
 }
 
 /** What is no longer chosen gives its place in the margin back to the notes; other forms stay. */
-const withoutChosen = (margin: Margin): Margin => (entityShown(margin) === null ? margin : NOTES);
+const withoutChosen = (margin: Margin): Margin =>
+  entityShown(margin) === null && !isOfSeveral(margin) ? margin : NOTES;
+
+const isOfSeveral = (margin: Margin) => margin.shows === 'form' && margin.form.form === 'several';
 
 /** The line or point that the margin is about, which it goes with. */
 function entityShown(margin: Margin): string | null {

@@ -6,12 +6,15 @@ import { lineText as text, waterText } from '#client/text/desk-forms.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
+import type { DeskStore } from '../model/desk-state.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure, NeededFigure, Words } from './form-fields.tsx';
 import { FormFindings, FormPane } from './form-pane.tsx';
+import { LineOperations } from './line-operations.tsx';
+import { VertexTable } from './vertex-table.tsx';
 
 /** Properties of one traced line; which of them matter depends on its kind. */
-export function LineForm({ lineId, ...form }: DeskFormProps & { lineId: string }) {
+export function LineForm({ lineId, store, ...form }: DeskFormProps & { lineId: string; store: DeskStore }) {
   const { document, reading, disabled, run, onClose } = form;
   const value = document.entities[lineId]?.value;
   if (value?.kind !== 'line') return null;
@@ -36,6 +39,7 @@ export function LineForm({ lineId, ...form }: DeskFormProps & { lineId: string }
       ) : null}
       {value.origin === 'adopted' ? <p className="m-0 text-ink-2">{adoptionText.ofLine}</p> : null}
       <FormFindings findings={findings} />
+      {disabled ? null : <LineOperations store={store} />}
       <Choice
         label={text.kind}
         value={value.line}
@@ -51,6 +55,7 @@ export function LineForm({ lineId, ...form }: DeskFormProps & { lineId: string }
         onCommit={(name) => change({ name })}
       />
       <KindFields line={value} lineId={lineId} form={form} change={change} />
+      <VertexTable store={store} lineId={lineId} line={value} disabled={disabled} />
       {disabled ? null : (
         <div className="border-t border-rule pt-3">
           <Button look="wrong" onClick={remove}>

@@ -17,6 +17,7 @@ import { GridProfileForm, PasteProfileForm } from './profile-forms.tsx';
 import { ReadingPane } from './reading-pane.tsx';
 import { SeepagePane } from './seepage-pane.tsx';
 import { SetOutForm } from './set-out-form.tsx';
+import { SeveralForm } from './several-form.tsx';
 import { SoilForm } from './soil-form.tsx';
 import { WaterForm } from './water-form.tsx';
 
@@ -37,6 +38,8 @@ export type MarginForm =
   /** `placedId`: the known point just placed, whose offset is typed next. */
   | { form: 'setOut'; placedId?: string }
   | { form: 'line'; lineId: string }
+  /** Whatever is chosen at once. */
+  | { form: 'several' }
   | { form: 'soil'; soilId: string }
   | { form: 'measured'; pointId: string }
   /** How a point is read; `byChoice`: opened because the point was chosen, beside whatever is being done. */
@@ -135,7 +138,9 @@ export function MarginFormPane({
     case 'measured':
       return <MeasuredForm {...form} key={open.pointId} pointId={open.pointId} />;
     case 'line':
-      return <LineForm {...form} key={open.lineId} lineId={open.lineId} />;
+      return <LineForm {...form} key={open.lineId} store={store} lineId={open.lineId} />;
+    case 'several':
+      return <SeveralForm store={store} disabled={disabled} onClose={onClose} />;
     case 'findings':
       return (
         <NetCheckPane

@@ -11,6 +11,7 @@ import { type SheetFrame, toScreen, type Viewport } from '../model/viewport.ts';
 import type { NoteBalloon } from '../render/build-scene.ts';
 import { aboveFinger } from './above-finger.ts';
 import { DraftActions } from './draft-actions.tsx';
+import { EditPrompt } from './edit-prompt.tsx';
 import { MAGNIFIER_SIDE_PX, Magnifier } from './magnifier.tsx';
 import { PointerReadout } from './pointer-readout.tsx';
 import { SectionViewSwitch } from './section-view-switch.tsx';
@@ -98,6 +99,7 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
         </div>
       </div>
       <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
+        <EditPrompt store={store} />
         <DraftActions store={store} onAction={(action) => controller?.act(action)} />
         <div className={isUnderMagnifier(follow, views.getState().view) ? 'order-first' : 'ml-auto'}>
           {controller && finger === null && (

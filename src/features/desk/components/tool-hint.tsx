@@ -3,6 +3,7 @@ import { fixedText, plainText } from '#client/lib/figures.ts';
 import { deskPaletteText as text } from '#client/text/desk-palette.ts';
 import { deskToolText } from '#client/text/desk-tools.ts';
 import { drawingWayText } from '#client/text/drawing-ways.ts';
+import { editingText } from '#client/text/editing-lines.ts';
 import { profileText } from '#client/text/profiles.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
 import { type ClickedPlaces, clickedPlacesOf } from '../model/clicked-places.ts';
@@ -41,6 +42,8 @@ function hintOf(state: DeskState, clicked: ClickedPlaces, way: DrawingWay): stri
   if (lineChoiceOf(state.tool, state.boundaryKind) !== null && way !== 'straight') {
     return `${text.hints[state.tool]}\n${drawingWayText.hints[way]}`;
   }
+  if (state.pendingEdit !== null) return `${editingText.asks[state.pendingEdit.op]}\n${editingText.leaveKey}`;
+  if (state.selection.kind === 'several' && state.tool === 'select') return editingText.form.hint;
   return chosenLineHint(state) ?? text.hints[state.tool];
 }
 

@@ -1,7 +1,7 @@
+import { plainText } from '#client/lib/figures.ts';
 import { editLabels, editNotices, editRefusals } from '#client/text/editing-lines.ts';
 import { joined, widestGap } from '#shared/compute/geometry/edit-lines/join.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
-import { plainText } from '#shared/text/number-text.ts';
 import { selectOne } from '../model/selection.ts';
 import type { EditResult, LineThing } from './edit-line.ts';
 import { keptPlace, notesAbout } from './edit-things.ts';

@@ -1,0 +1,25 @@
+import { useStore } from 'zustand';
+import { editingText as text } from '#client/text/editing-lines.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+
+/** Over the sheet: what the next click answers, and the way out of it. */
+export function EditPrompt({ store }: { store: DeskStore }) {
+  const asked = useStore(store, (state) => state.pendingEdit?.op ?? null);
+  if (asked === null) return null;
+  return (
+    <p
+      data-over-sheet
+      className="m-0 flex max-w-full items-baseline gap-3 rounded-sheet border border-ink bg-film px-3 py-1.5"
+    >
+      <span>{text.asks[asked]}</span>
+      <button
+        type="button"
+        aria-keyshortcuts="Escape"
+        className="touch shrink-0 border-0 bg-transparent underline"
+        onClick={() => store.requestEdit({ type: 'leaveEdit' })}
+      >
+        {text.leave}
+      </button>
+    </p>
+  );
+}
