@@ -14,6 +14,7 @@ import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
 import { StoreNotice } from '#client/features/desk/components/store-notice.tsx';
 import { ToolPalette } from '#client/features/desk/components/tool-palette.tsx';
 import { useDeskChecks } from '#client/features/desk/components/use-desk-checks.ts';
+import { useKeptView } from '#client/features/desk/components/use-kept-view.ts';
 import { useSavingMoments } from '#client/features/desk/components/use-saving-moments.ts';
 import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
@@ -59,6 +60,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
   const narrow = useMedia(NARROW);
   const { person } = useSession();
   const panes = usePanes(person?.id ?? '');
+  useKeptView(store, person?.id ?? '');
   const [dialog, setDialog] = useState<'none' | 'send' | 'compare'>('none');
   const notes = useDeskNotes(netId, store);
   const { margin, pane, setPane, show, close } = useMargin(store, narrow, notes, panes.bring);

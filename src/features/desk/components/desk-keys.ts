@@ -20,6 +20,10 @@ export const TOOL_KEYS: Readonly<Record<string, ToolId>> = {
 export const WATER_KEY = 'w';
 /** Goes on to the next way of drawing lines. */
 export const WAY_KEY = 'd';
+/** Opens and closes the list of what is on the sheet by kind. */
+export const LINES_KEY = 'h';
+/** Tells a screen reader what stands at the pointer. */
+export const TELL_KEY = 'q';
 
 const PAN_PX = 40;
 const PAN_FAR = 10;
@@ -87,6 +91,10 @@ export function deskKey(event: KeyboardEvent, target: Pick<KeyTarget, 'store'>):
     return true;
   }
   if (deskEditKey(event, target)) return true;
+  if (key === LINES_KEY || key === TELL_KEY) {
+    target.store.emitIntent({ type: key === LINES_KEY ? 'showLines' : 'tellPlace' });
+    return true;
+  }
   if (key === WAY_KEY && drawsLines(target.store)) {
     nextDrawingWay();
     return true;

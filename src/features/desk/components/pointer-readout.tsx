@@ -35,7 +35,8 @@ export function PointerReadout({ store }: { store: DeskStore }) {
   );
 }
 
-function wordsAt(at: SheetPoint, document: FlowNetDocument, { map, reading }: SetOut): PointerWords | null {
+/** Where a place of the sheet lies in the section; null before the section is set out. */
+export function wordsAt(at: SheetPoint, document: FlowNetDocument, { map, reading }: SetOut): PointerWords | null {
   if (map === null) return null;
   const [offset, elevation] = map.toSection(sheetPx(...at));
   const upstream = singleOf(document, 'setOut')?.value.upstream ?? null;

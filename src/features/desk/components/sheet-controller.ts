@@ -5,6 +5,7 @@ import { clickedPlacesOf } from '../model/clicked-places.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { drawingWayChoice } from '../model/drawing-way.ts';
 import { createInkClient } from '../model/ink-client.ts';
+import type { LiveHelpSource } from '../model/live-help-source.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
@@ -31,6 +32,8 @@ export type SheetControllerOptions = {
   readonly store: DeskStore;
   readonly views: ViewStore;
   notes(): readonly NoteBalloon[];
+  /** What is told beside the pointer; follows it from here. */
+  readonly help: LiveHelpSource;
   /** Place being set with the magnified view, or null. */
   onFollow(at: SheetPx | null): void;
   onPanning(panning: boolean): void;
@@ -84,10 +87,12 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       map: host.map(),
       readOnly: state.readOnly,
       zoom: view().zoom,
+      lineWeight: state.aids.lineWeight,
       seenAs: view().seenAs ?? null,
       frame: options.frame,
       clickedOn: clicked.among,
     });
+    renderer.setScanLook({ faded: state.aids.fadePct / 100, inverted: state.aids.inverted });
     const parts = partScene(scene);
     active = parts.active;
     renderer.showBase(parts.base);
@@ -110,6 +115,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     const underPointer = overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null);
     renderer.showActive([...active, ...itemsThrough(underPointer, view().seenAs ?? null)]);
     const magnified = (overlay.magnify || fingerHolds) && pointer !== null;
+    options.help.follow(pointer?.at ?? null, overlay, sheetZoom(view()));
     options.onFollow(magnified ? (overlay.snap?.at ?? pointer!.at) : null);
   }
 
@@ -225,6 +231,7 @@ function looksDiffer(a: DeskState, b: DeskState): boolean {
     a.pendingEdit !== b.pendingEdit ||
     a.tool !== b.tool ||
     a.hiddenKinds !== b.hiddenKinds ||
+    a.aids !== b.aids ||
     a.guides !== b.guides ||
     a.readOnly !== b.readOnly
   );

@@ -1,10 +1,11 @@
-import { useEffect, useId, useRef, useState } from 'react';
+import { useEffect, useId, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { classNames } from '#client/components/class-names.ts';
 import { deskViewText as text } from '#client/text/desk-view.ts';
 import type { ScreenPx, SheetPx } from '#shared/compute/frames.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import { createLiveHelp } from '../model/live-help-source.ts';
 import type { ToolId } from '../model/tool-choice.ts';
 import { createViewStore } from '../model/view-store.ts';
 import { type SheetFrame, toScreen, type Viewport } from '../model/viewport.ts';
@@ -13,8 +14,10 @@ import { aboveFinger } from './above-finger.ts';
 import { DraftActions } from './draft-actions.tsx';
 import { EditPrompt } from './edit-prompt.tsx';
 import { MAGNIFIER_SIDE_PX, Magnifier } from './magnifier.tsx';
+import { LiveHelp } from './live-help.tsx';
 import { PointerReadout } from './pointer-readout.tsx';
 import { SectionViewSwitch } from './section-view-switch.tsx';
+import { HiddenHint, SheetAids } from './sheet-aids.tsx';
 import { createSheetController, type SheetController } from './sheet-controller.ts';
 import { ZoomBar } from './zoom-bar.tsx';
 
@@ -40,6 +43,7 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
   // The frame comes as a new array with every answer of the server; the view keeps the one it was made with.
   const outline = useRef(frame);
   const [views] = useState(() => createViewStore(sheet, frame));
+  const help = useMemo(() => createLiveHelp(store), [store]);
   const [controller, setController] = useState<SheetController | null>(null);
   const [follow, setFollow] = useState<SheetPx | null>(null);
   const [panning, setPanning] = useState(false);
@@ -57,6 +61,7 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       store,
       views,
       notes: () => shownNotes.current,
+      help,
       onFollow: setFollow,
       onPanning: setPanning,
       onFinger: setFinger,
@@ -66,7 +71,7 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       setController(null);
       made.destroy();
     };
-  }, [sheet, store, views]);
+  }, [sheet, store, views, help]);
 
   useEffect(() => {
     shownNotes.current = notes;
@@ -91,16 +96,21 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       <span id={helpId} className="sr-only">
         {text.keysHelp}
       </span>
+      <LiveHelp store={store} views={views} source={help} touched={finger !== null} />
       <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 [&>*]:pointer-events-auto">
         <PointerReadout store={store} />
         <div className="ml-auto flex flex-wrap items-start justify-end gap-2">
           <SectionViewSwitch store={store} views={views} />
+          <SheetAids store={store} noteCount={notes.length} />
           <ZoomBar views={views} />
         </div>
       </div>
       <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
         <EditPrompt store={store} />
-        <DraftActions store={store} onAction={(action) => controller?.act(action)} />
+        <div className="flex flex-col items-start gap-2">
+          <HiddenHint store={store} />
+          <DraftActions store={store} onAction={(action) => controller?.act(action)} />
+        </div>
         <div className={isUnderMagnifier(follow, views.getState().view) ? 'order-first' : 'ml-auto'}>
           {controller && finger === null && (
             <Magnifier store={store} renderer={controller.renderer} follow={follow} />

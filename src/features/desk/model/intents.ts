@@ -11,4 +11,6 @@ export type DeskIntent =
   | { type: 'openLine'; id: string }
   | { type: 'openWaterLevels' }
   /** A line of the computed net was clicked, by its guide. */
-  | { type: 'pickComputedLine'; guideId: string };
+  | { type: 'pickComputedLine'; guideId: string }
+  | { type: 'showLines' }
+  | { type: 'tellPlace' };

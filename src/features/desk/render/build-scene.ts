@@ -15,10 +15,11 @@ import type { ClickedPlaces } from '../model/clicked-places.ts';
 import type { HideableKind } from '../model/desk-state.ts';
 import type { GuidesByOwner } from '../model/guides.ts';
 import type { Selection } from '../model/selection.ts';
+import type { LineWeight } from '../model/view-aids.ts';
 import type { SheetFrame } from '../model/viewport.ts';
 import { guideItems } from './guide-items.ts';
 import { handledVertices } from './handle-spacing.ts';
-import { COLOURS, lookOf, tracedLook, unfinishedLook } from './line-look.ts';
+import { COLOURS, lookOf, tracedLook, unfinishedLook, weighted } from './line-look.ts';
 import { placeWords } from './place-words.ts';
 import { profileItems } from './profile-items.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
@@ -48,6 +49,7 @@ export type SceneInput = {
   readonly map: SectionMap | null;
   readonly readOnly: boolean;
   readonly zoom: number;
+  readonly lineWeight: LineWeight;
   /** Sheet pixels to pixels of the picture, as through which the sheet is seen; null = as it is drawn. */
   readonly seenAs: LinearMap | null;
   /** The section's part of the sheet, outlined when the sheet holds more; null = the whole sheet. */
@@ -112,7 +114,8 @@ function isChosen(id: string, input: SceneInput): boolean {
 function lineItem({ id, value }: Shown, input: SceneInput): SceneLine[] {
   if (value.kind !== 'line' || value.points.length === 0) return [];
   const drawn = value.finished || input.draftId === id;
-  const look = drawn ? tracedLook(value.line, value.origin) : unfinishedLook(value.line);
+  const own = drawn ? tracedLook(value.line, value.origin) : unfinishedLook(value.line);
+  const look = weighted(own, input.lineWeight);
   return [{ id, shape: 'line', points: value.points, look, strong: isChosen(id, input) }];
 }
 

@@ -1,4 +1,5 @@
 import type { LineKind, TracedLine } from '#shared/contract/document.ts';
+import type { LineWeight } from '../model/view-aids.ts';
 
 export const COLOURS = {
   ink: '#1c2733',
@@ -48,4 +49,11 @@ export function tracedLook(kind: LineKind, origin: TracedLine['origin']): LineLo
 /** A line that is still being drawn: of its kind's colour, finely dashed and open at its ends. */
 export function unfinishedLook(kind: LineKind): LineLook {
   return { ...LOOKS[kind], dashPx: [4, 3], end: 'ring', hatchPx: 0 };
+}
+
+const WEIGHTS: Readonly<Record<LineWeight, number>> = { thin: 0.5, normal: 1, heavy: 1.7 };
+
+/** A look with its strokes as thin or heavy as the person at the screen wants them; dashes and marks stay. */
+export function weighted(look: LineLook, weight: LineWeight): LineLook {
+  return weight === 'normal' ? look : { ...look, widthPx: look.widthPx * WEIGHTS[weight] };
 }

@@ -1,6 +1,7 @@
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { Viewport } from '../model/viewport.ts';
 import { type LoadedTile, tileLoader } from './load-tile.ts';
+import { AS_SCANNED, paintWithLook, type ScanLook } from './scan-look.ts';
 import type { SceneItem } from './scene.ts';
 import { createTileLayer } from './tile-layer.ts';
 import { paintTiles, wantedTiles } from './tile-painter.ts';
@@ -24,6 +25,8 @@ export type SheetRenderer = {
   showBase(items: readonly SceneItem[]): void;
   /** What is being worked on: the chosen line, its handles, the band to the pointer. */
   showActive(items: readonly SceneItem[]): void;
+  /** How the scan is shown; the traces over it stay as they are. */
+  setScanLook(look: ScanLook): void;
   /** A second, magnified view on the same tiles; `paint` is called again whenever a tile arrives. */
   addView(name: string, paint: () => void): { want(view: Viewport): void; end(): void };
   paintInto(context: CanvasRenderingContext2D, view: Viewport): void;
@@ -44,6 +47,7 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
   let tilesDue = false;
   let baseDue = false;
   let activeDue = false;
+  let look = AS_SCANNED;
   let restTimer: ReturnType<typeof setTimeout> | undefined;
 
   const store: TileStore<LoadedTile> = createTileStore({
@@ -100,6 +104,12 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
     },
     showBase: (items) => due(base.showItems(items), false),
     showActive: (items) => due(false, active.showItems(items)),
+    setScanLook(next) {
+      if (next.faded === look.faded && next.inverted === look.inverted) return;
+      look = next;
+      tiles.setLook(next);
+      for (const paint of extraViews.values()) paint();
+    },
     addView(name, paint) {
       extraViews.set(name, paint);
       return {
@@ -110,7 +120,8 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
         },
       };
     },
-    paintInto: (target, shown) => paintTiles(target, sheet, store, shown, ratio()),
+    paintInto: (target, shown) =>
+      paintWithLook(target, look, () => paintTiles(target, sheet, store, shown, ratio())),
     isWaiting: () => store.isWaiting(),
     destroy() {
       cancelAnimationFrame(scheduled);

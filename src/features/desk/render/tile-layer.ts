@@ -2,6 +2,7 @@ import { IDENTITY } from '#shared/compute/linear-map.ts';
 import type { SheetFrame, Viewport } from '../model/viewport.ts';
 import { seenFrame } from '../model/viewport.ts';
 import type { LoadedTile } from './load-tile.ts';
+import { AS_SCANNED, paperColour, type ScanLook, scanFilter, veilColour } from './scan-look.ts';
 import {
   levelFor,
   levelScale,
@@ -16,13 +17,15 @@ import type { TileStore } from './tile-store.ts';
 
 /** From here on each pixel of the scan is shown as a square: blurring it would hide where it ends. */
 export const SQUARES_FROM_ZOOM = 4;
-const EMPTY_SHEET_COLOUR = '#f1eee4';
+/** Over tiles of every level. */
+const VEIL_Z = '100';
 
 export type TileLayer = {
   /** Takes a view on; true when other tiles or other sizes are in sight than before. */
   show(view: Viewport): boolean;
   /** A tile has come in: what stood in for it can go. */
   refresh(): void;
+  setLook(look: ScanLook): void;
   destroy(): void;
 };
 
@@ -41,10 +44,15 @@ export function createTileLayer(
   Object.assign(clip.style, { position: 'absolute', inset: '0', overflow: 'hidden', contain: 'strict' });
   Object.assign(paper.style, { position: 'absolute', left: '0', top: '0', willChange: 'transform' });
   paper.style.transformOrigin = '0 0';
-  paper.style.background = EMPTY_SHEET_COLOUR;
+  paper.style.background = paperColour(AS_SCANNED);
+  // Painted with the tiles into their one layer, so that a faded scan is panned as cheaply as another.
+  const veil = host.ownerDocument.createElement('div');
+  Object.assign(veil.style, { position: 'absolute', inset: '0', zIndex: VEIL_Z, display: 'none' });
+  paper.append(veil);
   clip.append(paper);
   host.append(clip);
   let view: Viewport | null = null;
+  let look = AS_SCANNED;
   let laidOut = '';
   let shown = new Map<string, HTMLImageElement>();
 
@@ -57,6 +65,7 @@ export function createTileLayer(
       const picture = store.get(tile);
       if (picture === null) continue;
       next.set(tileKey(tile), picture.image);
+      picture.image.style.filter = scanFilter(look);
       place(picture.image, boxOf(sheet, tile, picture), view.zoom, ratio, tile.z);
     }
     for (const [key, image] of shown) if (next.get(key) !== image) image.remove();
@@ -83,6 +92,14 @@ export function createTileLayer(
       return true;
     },
     refresh: layOut,
+    setLook(next) {
+      look = next;
+      paper.style.background = paperColour(look);
+      veil.style.display = look.faded > 0 ? '' : 'none';
+      veil.style.background = veilColour(look);
+      veil.style.opacity = String(look.faded);
+      layOut();
+    },
     destroy: () => clip.remove(),
   };
 }

@@ -30,6 +30,7 @@ function inputOf(changes: Partial<SceneInput> = {}): SceneInput {
     selection: { kind: 'none', ids: [], vertex: null },
     draftId: null,
     hiddenKinds: [],
+    lineWeight: 'normal',
     notes: [],
     guides: {},
     map: null,

@@ -1,0 +1,37 @@
+import { liveHelpText as text } from '#client/text/tracing-aids.ts';
+import { elevationUnit } from '#shared/text/unit-text.ts';
+import type { DeskState } from '../model/desk-state.ts';
+import type { LiveHelp } from '../model/live-help.ts';
+import type { HeadThere, HelpShown } from '../model/live-help-source.ts';
+
+type Read = Pick<DeskState, 'document' | 'reading' | 'documentRevision'>;
+
+/** What is told of a place while a line is drawn, a line of words for each fact. `place`: its offset and elevation. */
+export function helpWords(shown: HelpShown, place: readonly string[], read: Read): string[] {
+  return [
+    ...(shown.snap === null ? [] : [text.snaps[shown.snap]]),
+    ...place,
+    ...headWords(shown.head, read),
+    ...shown.help.meetings.map(({ kind, angleDeg, wantsRight }) => text.angle(angleDeg, kind, wantsRight)),
+    ...cellWords(shown.help),
+  ];
+}
+
+/** The head with the lines it lies between, and of which net it is. */
+export function headWords(there: HeadThere | null, { document, reading, documentRevision }: Read): string[] {
+  if (there === null) return [];
+  if (there.head === null) return [text.noHead];
+  const unit = elevationUnit(document.unitSystem, document.datum);
+  const headOf = (id: string) => reading?.lines.find((line) => line.id === id)?.head ?? null;
+  const { before, after } = there.head.between;
+  return [
+    text.head(there.head.totalHead, unit),
+    text.between(headOf(before), headOf(after), there.of === documentRevision),
+  ];
+}
+
+function cellWords({ cells, wantedRatio }: LiveHelp): string[] {
+  if (cells.length === 0) return [];
+  const ratios = cells.map(({ ratio, side }) => text.cellSide(ratio, cells.length > 1 ? side : null));
+  return [text.cells(ratios, wantedRatio)];
+}

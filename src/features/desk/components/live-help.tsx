@@ -1,0 +1,114 @@
+import { type CSSProperties, useEffect, useMemo, useState } from 'react';
+import { useStore } from 'zustand';
+import { deskViewText } from '#client/text/desk-view.ts';
+import { liveHelpText as text } from '#client/text/tracing-aids.ts';
+import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
+import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
+import type { DeskStore } from '../model/desk-state.ts';
+import type { HelpShown, LiveHelpSource } from '../model/live-help-source.ts';
+import type { ViewStore } from '../model/view-store.ts';
+import { toScreen } from '../model/viewport.ts';
+import { headWords, helpWords } from './live-help-words.ts';
+import { wordsAt } from './pointer-readout.tsx';
+
+type LiveHelpProps = {
+  store: DeskStore;
+  views: ViewStore;
+  source: LiveHelpSource;
+  /** True while a finger places: the figures then stand in the corner and not beneath the hand. */
+  touched: boolean;
+};
+
+/** Figures beside the pointer while a line is drawn or a vertex dragged, and their words for whoever asks to hear them. */
+export function LiveHelp({ store, views, source, touched }: LiveHelpProps) {
+  const shown = useStore(source.state, (state) => state.shown);
+  return (
+    <>
+      {shown === null ? null : <Beside store={store} views={views} shown={shown} touched={touched} />}
+      <Told store={store} source={source} />
+    </>
+  );
+}
+
+const AWAY_PX = 18;
+const WIDTH_PX = 250;
+const LINE_PX = 18;
+/** Under the readout of the pointer, where a finger seldom is. */
+const CORNER = { left: 12, top: 56 };
+/** Words over the scan are read by a halo of the paper's colour, as the marks on it are. */
+const HALO: CSSProperties = {
+  textShadow: Array.from({ length: 5 }, () => '0 0 2px var(--color-film)').join(', '),
+};
+
+function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> & { shown: HelpShown }) {
+  const document = useStore(store, (state) => state.document);
+  const reading = useStore(store, (state) => state.reading);
+  const documentRevision = useStore(store, (state) => state.documentRevision);
+  const view = useStore(views, (state) => state.view);
+  const setOut = useMemo(() => readSetOut(document), [document]);
+  const words = helpWords(shown, placeWords(shown.at, document, setOut), {
+    document,
+    reading,
+    documentRevision,
+  });
+  const [x, y] = toScreen(view, shown.at);
+  const height = words.length * LINE_PX;
+  // Beside the pointer where there is room: to its right and below, else to the other side.
+  const left = x + AWAY_PX + WIDTH_PX > view.widthPx ? x - AWAY_PX - WIDTH_PX : x + AWAY_PX;
+  const top = y + AWAY_PX + height > view.heightPx ? y - AWAY_PX - height : y + AWAY_PX;
+  const place = touched ? CORNER : { left: Math.max(4, left), top: Math.max(4, top) };
+  return (
+    // Said aloud at every movement it would drown everything else; Q tells it.
+    <div
+      aria-hidden="true"
+      data-live-help
+      className="pointer-events-none absolute top-0 left-0 text-sm font-semibold"
+      style={{
+        ...HALO,
+        width: WIDTH_PX,
+        transform: `translate(${Math.round(place.left)}px, ${Math.round(place.top)}px)`,
+        textAlign: !touched && left < x ? 'right' : 'left',
+      }}
+    >
+      {words.map((line) => (
+        <p key={line} className="m-0 leading-[18px]">
+          {line}
+        </p>
+      ))}
+    </div>
+  );
+}
+
+/** Tells, when it is asked, what stands at the pointer. */
+function Told({ store, source }: Pick<LiveHelpProps, 'store' | 'source'>) {
+  const [told, setTold] = useState('');
+  useEffect(
+    () =>
+      store.onIntent((intent) => {
+        if (intent.type === 'tellPlace') void wordsNow(store, source).then(setTold);
+      }),
+    [store, source],
+  );
+  return <output className="sr-only">{told}</output>;
+}
+
+async function wordsNow(store: DeskStore, source: LiveHelpSource): Promise<string> {
+  const { shown } = source.state.getState();
+  const { pointerAt, document } = store.getState();
+  const at = shown?.at ?? (pointerAt === null ? null : sheetPx(...pointerAt));
+  if (at === null) return text.nothing;
+  const place = placeWords(at, document, readSetOut(document));
+  const read = await store.headAt([at[0], at[1]]);
+  const head = read === null ? null : { ...read, at };
+  const words =
+    shown === null
+      ? [...place, ...headWords(head, store.getState())]
+      : helpWords({ ...shown, head: head ?? shown.head }, place, store.getState());
+  return words.length === 0 ? deskViewText.pixels(at[0], at[1]) : `${words.join('. ')}.`;
+}
+
+function placeWords(at: SheetPx, document: FlowNetDocument, setOut: SetOut): string[] {
+  const words = wordsAt([at[0], at[1]], document, setOut);
+  return words === null ? [] : [deskViewText.elevation(words), deskViewText.offset(words)];
+}
