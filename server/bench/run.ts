@@ -3,6 +3,7 @@ import { parseArgs } from 'node:util';
 import type { Bench, BenchRow } from './bench.ts';
 import { firstLoad } from './first-load.ts';
 import { independentSolution } from './independent-bench.ts';
+import { inkFollow } from './ink-follow.ts';
 import { panFrame } from './pan-frame.ts';
 import { fieldSolve, readingError, reread200, wholeNet60 } from './reading-bench.ts';
 import { scheduleApi } from './schedule-api.ts';
@@ -22,6 +23,7 @@ const benches: readonly Bench[] = [
   wholeNet60,
   fieldSolve,
   readingError,
+  inkFollow,
   sheetPdf,
 ];
 
