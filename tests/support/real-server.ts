@@ -14,8 +14,10 @@ export interface RealServer {
   db: DataSource;
   /** Stops the process and starts another on the same database, storage and port. */
   restart(): Promise<void>;
-  /** Stops the process and leaves the rest, as a breakdown would. */
+  /** Stops the process in order and leaves the rest. */
   stop(): Promise<void>;
+  /** Ends the process as a breakdown would: in the middle of whatever it does. */
+  kill(): Promise<void>;
   close(): Promise<void>;
 }
 
@@ -51,6 +53,10 @@ export async function startRealServer(env: Record<string, string> = {}): Promise
       server = await start();
     },
     stop: () => server.stop(),
+    async kill() {
+      process.kill(server.pid, 'SIGKILL');
+      await server.ended;
+    },
     async close() {
       await server.stop();
       await db.destroy();
