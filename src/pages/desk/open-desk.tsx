@@ -10,7 +10,7 @@ import { MarginFormPane } from '#client/features/desk/components/margin-form.tsx
 import { PresenceLine } from '#client/features/desk/components/presence-line.tsx';
 import { ReadOnlyLine } from '#client/features/desk/components/read-only-line.tsx';
 import { SavingLine } from '#client/features/desk/components/saving-line.tsx';
-import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
+import { ShownSheet } from '#client/features/desk/components/shown-sheet.tsx';
 import { StoreNotice } from '#client/features/desk/components/store-notice.tsx';
 import { ToolPalette } from '#client/features/desk/components/tool-palette.tsx';
 import { useDeskChecks } from '#client/features/desk/components/use-desk-checks.ts';
@@ -128,7 +128,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             </>
           }
           sheet={
-            <SheetView
+            <ShownSheet
               key={sheet.id}
               store={store}
               sheet={sheet}

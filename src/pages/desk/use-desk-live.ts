@@ -21,6 +21,9 @@ export function useDeskLive(netId: string, session: DeskSession): void {
       refresh(revisionKeys.root);
       return;
     }
+    // The sheet may be shown by another picture.
+    if (message.type === 'drawing' && message.drawingId === drawingOf(netId, queryClient))
+      refresh(netKeys.detail(netId));
     if (!('netId' in message) || message.netId !== netId) return;
     if (message.type === 'net' && message.clientId !== session.saving?.clientId) catchUp();
     if (message.type === 'net' && isAsSent(netId, queryClient)) refresh(netKeys.detail(netId));
@@ -36,4 +39,8 @@ export function useDeskLive(netId: string, session: DeskSession): void {
 function isAsSent(netId: string, queryClient: QueryClient): boolean {
   const net = queryClient.getQueryData<NetDetailDto>(netKeys.detail(netId))?.net;
   return net !== undefined && net.state !== 'draft' && !net.changedSinceRevision;
+}
+
+function drawingOf(netId: string, queryClient: QueryClient): string | undefined {
+  return queryClient.getQueryData<NetDetailDto>(netKeys.detail(netId))?.drawing.id;
 }

@@ -3,6 +3,7 @@ import { useStore } from 'zustand';
 import { deskViewText as text } from '#client/text/desk-view.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import type { SheetRaster } from '../model/sheet-raster.ts';
 import { centredOn, type Viewport } from '../model/viewport.ts';
 import { paintMagnified } from '../render/magnified.ts';
 import type { SheetRenderer } from '../render/sheet-renderer.ts';
@@ -12,11 +13,11 @@ import { useFinePlacing } from './use-fine-placing.ts';
 export const MAGNIFIER_SIDE_PX = 168;
 const ZOOM = 8;
 
-function viewAround(at: SheetPx): Viewport {
-  return centredOn(
-    { zoom: ZOOM, origin: sheetPx(0, 0), widthPx: MAGNIFIER_SIDE_PX, heightPx: MAGNIFIER_SIDE_PX },
-    at,
-  );
+/** The raster about a place as it is shown, never as a section through a map of its own. */
+function viewAround({ fromBase }: SheetRaster, at: SheetPx): Viewport {
+  const size = { widthPx: MAGNIFIER_SIDE_PX, heightPx: MAGNIFIER_SIDE_PX };
+  const seen = fromBase && { seenAs: fromBase };
+  return centredOn({ zoom: ZOOM, origin: sheetPx(0, 0), ...size, ...seen }, at);
 }
 
 type MagnifierProps = {
@@ -37,13 +38,13 @@ export function Magnifier({ store, renderer, follow }: MagnifierProps) {
   const readOnly = useStore(store, (state) => state.readOnly);
   const canvas = useRef<HTMLCanvasElement>(null);
   const chosen = readOnly ? null : (finePlaceOf(document, selection)?.at ?? null);
-  const placing = useFinePlacing(store, chosen, viewAround);
+  const placing = useFinePlacing(store, chosen, (at) => viewAround(renderer.raster, at));
   const centre = placing.centre ?? follow ?? chosen;
 
   useEffect(() => {
     const element = canvas.current;
     if (element === null || centre === null) return;
-    const view = viewAround(centre);
+    const view = viewAround(renderer.raster, centre);
     const paint = () => paintMagnified(element, renderer, view, { document, preview });
     const extra = renderer.addView('magnifier', paint);
     extra.want(view);

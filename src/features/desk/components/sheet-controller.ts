@@ -1,17 +1,20 @@
 import { type ScreenPx, type SheetPx, sheetPx } from '#shared/compute/frames.ts';
-import { IDENTITY, inverted, mapped } from '#shared/compute/linear-map.ts';
+import { planeInverse, SAME_PLACE, throughPlane } from '#shared/compute/plane-map.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import { clickedPlacesOf } from '../model/clicked-places.ts';
+import { createCrossingClient } from '../model/crossing-client.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { drawingWayChoice } from '../model/drawing-way.ts';
 import { createInkClient } from '../model/ink-client.ts';
 import type { LiveHelpSource } from '../model/live-help-source.ts';
+import type { SheetRaster } from '../model/sheet-raster.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import { type SheetFrame, sheetZoom, type Viewport } from '../model/viewport.ts';
-import { buildScene, type NoteBalloon, noteIdOf, partScene } from '../render/build-scene.ts';
+import { buildSheetScene, type NoteBalloon, noteIdOf, partScene } from '../render/build-scene.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
+import { LABEL_PREFIX } from '../render/place-words.ts';
 import type { SceneItem } from '../render/scene.ts';
 import { itemsThrough } from '../render/seen-through.ts';
 import { createSheetRenderer, type SheetRenderer } from '../render/sheet-renderer.ts';
@@ -28,6 +31,8 @@ export type SheetControllerOptions = {
   /** Under everything else in the element: the canvases go in here. */
   readonly layers: HTMLElement;
   readonly sheet: SheetDto;
+  /** By which the sheet is shown. */
+  readonly raster: SheetRaster;
   readonly frame: SheetFrame | null;
   readonly store: DeskStore;
   readonly views: ViewStore;
@@ -53,15 +58,18 @@ export type SheetController = {
 /** Holds a sheet view together outside of React: stores to scenes, pointers and keys to tools. */
 export function createSheetController(options: SheetControllerOptions): SheetController {
   const { element, sheet, store, views } = options;
-  const renderer = createSheetRenderer(options.layers, sheet);
+  const renderer = createSheetRenderer(options.layers, options.raster);
   const ink = createInkClient(sheet);
-  const host = createToolHost(store, ink);
+  const crossings = createCrossingClient(sheet);
+  const host = createToolHost(store, ink, crossings);
   const clicked = clickedPlacesOf(store);
   let pointer: { at: SheetPx; keys: Modifiers; view: HostView } | null = null;
   let overlay: ToolOverlay = NO_OVERLAY;
   let fingerHolds = false;
   let sceneDue = false;
   let scene: readonly SceneItem[] = [];
+  /** Labels for which there is no room, by their ids. */
+  let crowded: ReadonlyMap<string, SceneItem> = new Map();
   let active: readonly SceneItem[] = [];
 
   const view = () => views.getState().view;
@@ -75,7 +83,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   function showScene(): void {
     sceneDue = false;
     const state = store.getState();
-    scene = buildScene({
+    const built = buildSheetScene({
       document: state.document,
       preview: state.preview,
       reading: state.reading,
@@ -92,6 +100,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       frame: options.frame,
       clickedOn: clicked.among,
     });
+    scene = built.items;
+    crowded = new Map(built.crowded.map((label) => [label.id, label]));
     renderer.setScanLook({ faded: state.aids.fadePct / 100, inverted: state.aids.inverted });
     const parts = partScene(scene);
     active = parts.active;
@@ -113,10 +123,19 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
         ? NO_OVERLAY
         : host.overlay(pointer.at, pointer.keys, { ...pointer.view, zoom: sheetZoom(view()) });
     const underPointer = overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null);
-    renderer.showActive([...active, ...itemsThrough(underPointer, view().seenAs ?? null)]);
+    const pointedAt = itemsThrough(underPointer, view().seenAs ?? null);
+    renderer.showActive([...active, ...crowdedAtPointer(), ...pointedAt]);
     const magnified = (overlay.magnify || fingerHolds) && pointer !== null;
     options.help.follow(pointer?.at ?? null, overlay, sheetZoom(view()));
-    options.onFollow(magnified ? (overlay.snap?.at ?? pointer!.at) : null);
+    options.onFollow(magnified ? (overlay.drawnCrossing ?? overlay.snap?.at ?? pointer!.at) : null);
+  }
+
+  /** A label that finds no room on the sheet is shown while its line is pointed at. */
+  function crowdedAtPointer(): readonly SceneItem[] {
+    if (crowded.size === 0 || pointer === null) return [];
+    const lineId = host.lineAt(pointer.at, { ...pointer.view, zoom: sheetZoom(view()) });
+    const label = lineId === null ? undefined : crowded.get(`${LABEL_PREFIX}${lineId}`);
+    return label === undefined ? [] : [label];
   }
 
   function followPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void {
@@ -149,6 +168,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   const settle = () => store.requestEdit({ type: 'settle' });
 
   ink.onLook(() => pointer !== null && showOverlay());
+  crossings.onLook(() => pointer !== null && showOverlay());
   const sizes = new ResizeObserver(() => views.resize(element.clientWidth, element.clientHeight));
   sizes.observe(element);
   views.resize(element.clientWidth, element.clientHeight);
@@ -192,6 +212,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       sceneDue = false;
       sizes.disconnect();
       ink.close();
+      crossings.close();
       for (const end of endings) end();
       element.ownerDocument.removeEventListener('keydown', key);
       element.removeEventListener('keyup', keyUp);
@@ -209,13 +230,13 @@ function balloonsOf(
   notes: readonly NoteBalloon[],
 ): Balloon[] {
   const lines = new Map(notes.map(({ id, lineId }) => [id, lineId]));
-  const back = seenAs === undefined ? IDENTITY : inverted(seenAs);
+  const back = seenAs === undefined ? SAME_PLACE : planeInverse(seenAs);
   return scene.flatMap((item) => {
     if (item.shape !== 'balloon') return [];
     const [dx, dy] = item.offsetPx;
     const id = noteIdOf(item.id);
     const lineId = lines.get(id);
-    const at = sheetPx(...mapped(back, item.at[0] + dx / zoom, item.at[1] + dy / zoom));
+    const at = sheetPx(...throughPlane(back, item.at[0] + dx / zoom, item.at[1] + dy / zoom));
     return [lineId === undefined ? { id, at } : { id, at, lineId }];
   });
 }

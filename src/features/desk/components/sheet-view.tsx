@@ -1,4 +1,4 @@
-import { useEffect, useId, useMemo, useRef, useState } from 'react';
+import { type ReactNode, useEffect, useId, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { classNames } from '#client/components/class-names.ts';
 import { deskViewText as text } from '#client/text/desk-view.ts';
@@ -6,6 +6,7 @@ import type { ScreenPx, SheetPx } from '#shared/compute/frames.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { createLiveHelp } from '../model/live-help-source.ts';
+import { rasterOf, type SheetRaster } from '../model/sheet-raster.ts';
 import type { ToolId } from '../model/tool-choice.ts';
 import { createViewStore } from '../model/view-store.ts';
 import { type SheetFrame, toScreen, type Viewport } from '../model/viewport.ts';
@@ -13,36 +14,57 @@ import type { NoteBalloon } from '../render/build-scene.ts';
 import { aboveFinger } from './above-finger.ts';
 import { DraftActions } from './draft-actions.tsx';
 import { EditPrompt } from './edit-prompt.tsx';
-import { MAGNIFIER_SIDE_PX, Magnifier } from './magnifier.tsx';
 import { LiveHelp } from './live-help.tsx';
+import { MAGNIFIER_SIDE_PX, Magnifier } from './magnifier.tsx';
+import { PictureButton } from './picture-button.tsx';
+import type { PictureFacts } from './picture-plan.ts';
 import { PointerReadout } from './pointer-readout.tsx';
 import { SectionViewSwitch } from './section-view-switch.tsx';
 import { HiddenHint, SheetAids } from './sheet-aids.tsx';
 import { createSheetController, type SheetController } from './sheet-controller.ts';
+import { useOpenedSheet } from './use-opened-sheet.ts';
 import { ZoomBar } from './zoom-bar.tsx';
 
 type SheetViewProps = {
   store: DeskStore;
   sheet: SheetDto;
+  /** By which the sheet is shown; without one it is shown as it was scanned. Another raster needs another `key`. */
+  raster?: SheetRaster;
+  /** A control of what is shown, beside those of how. */
+  pictureSwitch?: ReactNode;
   /** The section's part of the sheet, shown when fitted; null = the whole sheet. */
   frame: SheetFrame | null;
   notes: readonly NoteBalloon[];
   /** Accessible name: which section of which drawing is shown. */
   label: string;
   className?: string;
+  /** What the title block of a picture says; left out where none is made. */
+  picture?: () => PictureFacts;
 };
 
 /**
  * The sheet with its traces: pans, zooms and feeds the tool in hand. A read-only store shows it without tools. Another
  * sheet needs another `key`, because the view and its tiles belong to one sheet.
  */
-export function SheetView({ store, sheet, frame, notes, label, className }: SheetViewProps) {
+export function SheetView({
+  store,
+  sheet,
+  raster,
+  pictureSwitch,
+  frame,
+  notes,
+  label,
+  className,
+  picture,
+}: SheetViewProps) {
+  const opened = useOpenedSheet(sheet);
   const element = useRef<HTMLDivElement>(null);
   const layers = useRef<HTMLDivElement>(null);
   const shownNotes = useRef(notes);
   // The frame comes as a new array with every answer of the server; the view keeps the one it was made with.
   const outline = useRef(frame);
-  const [views] = useState(() => createViewStore(sheet, frame));
+  const [shown] = useState(() => raster ?? rasterOf(sheet, true));
+  const [views] = useState(() => createViewStore(shown, frame));
   const help = useMemo(() => createLiveHelp(store), [store]);
   const [controller, setController] = useState<SheetController | null>(null);
   const [follow, setFollow] = useState<SheetPx | null>(null);
@@ -56,7 +78,8 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
     const made = createSheetController({
       element: element.current,
       layers: layers.current,
-      sheet,
+      sheet: opened,
+      raster: shown,
       frame: outline.current,
       store,
       views,
@@ -71,7 +94,12 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       setController(null);
       made.destroy();
     };
-  }, [sheet, store, views, help]);
+  }, [opened, shown, store, views, help]);
+
+  useEffect(() => {
+    // A cleaned-up picture is made when its sheet is ready.
+    if (sheet.shown === undefined) controller?.renderer.sharpen(sheet.tiles);
+  }, [sheet, controller]);
 
   useEffect(() => {
     shownNotes.current = notes;
@@ -100,15 +128,21 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 [&>*]:pointer-events-auto">
         <PointerReadout store={store} />
         <div className="ml-auto flex flex-wrap items-start justify-end gap-2">
+          {pictureSwitch}
           <SectionViewSwitch store={store} views={views} />
           <SheetAids store={store} noteCount={notes.length} />
+          {picture && (
+            <PictureButton
+              of={{ store, views, raster: newest(shown, sheet), frame, notes, facts: picture }}
+            />
+          )}
           <ZoomBar views={views} />
         </div>
       </div>
       <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
-        <EditPrompt store={store} />
         <div className="flex flex-col items-start gap-2">
           <HiddenHint store={store} />
+          <EditPrompt store={store} />
           <DraftActions store={store} onAction={(action) => controller?.act(action)} />
         </div>
         <div className={isUnderMagnifier(follow, views.getState().view) ? 'order-first' : 'ml-auto'}>
@@ -124,6 +158,11 @@ export function SheetView({ store, sheet, frame, notes, label, className }: Shee
       )}
     </div>
   );
+}
+
+/** The raster with the finest tiles that are made by now. */
+function newest(raster: SheetRaster, { tiles }: SheetDto): SheetRaster {
+  return raster.tiles.rendition === tiles.rendition ? { ...raster, tiles } : raster;
 }
 
 const MAGNIFIER_CORNER_PX = 210;

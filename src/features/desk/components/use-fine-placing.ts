@@ -1,7 +1,7 @@
 import { type KeyboardEvent, type PointerEvent, useState } from 'react';
 import { type SheetPx, screenPx, sheetPx } from '#shared/compute/frames.ts';
 import type { DeskStore } from '../model/desk-state.ts';
-import { toSheet, type Viewport } from '../model/viewport.ts';
+import { steppedOnScreen, toSheet, type Viewport } from '../model/viewport.ts';
 import { finelyPlaced } from '../tools/fine-place.ts';
 
 const STEPS: Readonly<Record<string, readonly [number, number]>> = {
@@ -69,7 +69,7 @@ export function useFinePlacing(
         event.preventDefault();
         event.stopPropagation();
         const by = event.shiftKey ? 1 : FINE_STEP_PX;
-        placeTo(sheetPx(from[0] + direction[0] * by, from[1] + direction[1] * by), true);
+        placeTo(steppedOnScreen(viewAround(from), from, direction[0] * by, direction[1] * by), true);
       },
     },
   };

@@ -1,9 +1,11 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import { type ScreenPx, type SheetPx, screenPx, sheetPx } from '#shared/compute/frames.ts';
 import type { LinearMap } from '#shared/compute/linear-map.ts';
+import { isAffine, linearAt, type PlaneMap, planeProduct } from '#shared/compute/plane-map.ts';
 import {
   centredOn,
   fitFrame,
+  fitSheet,
   keptInSight,
   onWholePixels,
   panBy,
@@ -31,10 +33,21 @@ export type ViewStore = StoreApi<ViewState> & ViewActions;
 /** A place that is looked at is shown at least so large. */
 const LOOK_ZOOM = 0.5;
 
-/** The one viewport of a sheet view; tiles and traces both follow it. `frame`: the section's part of the sheet. */
+/**
+ * The one viewport of a sheet view; tiles and traces both follow it. `sheet`: the raster that is shown; `frame`: the
+ * section's part of the sheet.
+ */
 export function createViewStore(sheet: SheetSize, frame: SheetFrame | null): ViewStore {
-  const whole = frame ?? ([0, 0, sheet.widthPx, sheet.heightPx] as const);
-  const unmeasured: Viewport = { zoom: 1, origin: sheetPx(0, 0), widthPx: 0, heightPx: 0 };
+  const asShown = sheet.fromBase ?? null;
+  let section: LinearMap | null = null;
+  const fitted = (view: Viewport) => (frame === null ? fitSheet(view, sheet) : fitFrame(view, frame));
+  const unmeasured: Viewport = {
+    zoom: 1,
+    origin: sheetPx(0, 0),
+    widthPx: 0,
+    heightPx: 0,
+    ...(asShown && { seenAs: asShown }),
+  };
   const store = createStore<ViewState>(() => ({ view: unmeasured }));
   const set = (view: Viewport) => {
     if (view !== store.getState().view) {
@@ -49,9 +62,7 @@ export function createViewStore(sheet: SheetSize, frame: SheetFrame | null): Vie
       const view = now();
       if (view.widthPx === widthPx && view.heightPx === heightPx) return;
       set(
-        view.widthPx === 0
-          ? fitFrame({ ...view, widthPx, heightPx }, whole)
-          : resized(view, widthPx, heightPx, sheet),
+        view.widthPx === 0 ? fitted({ ...view, widthPx, heightPx }) : resized(view, widthPx, heightPx, sheet),
       );
     },
     pan: (dxPx, dyPx) => set(panBy(now(), dxPx, dyPx, sheet)),
@@ -60,16 +71,22 @@ export function createViewStore(sheet: SheetSize, frame: SheetFrame | null): Vie
       set(zoomAbout(view, at ?? screenPx(view.widthPx / 2, view.heightPx / 2), factor, sheet));
     },
     seeAs(map) {
+      if (section === map) return;
+      section = map;
       const view = now();
-      if ((view.seenAs ?? null) === map) return;
-      set(
-        view.widthPx === 0 ? seenThrough(view, map, sheet) : fitFrame(seenThrough(view, map, sheet), whole),
-      );
+      const through = seenThrough(view, map === null ? asShown : sectionAsShown(map, asShown), sheet);
+      set(view.widthPx === 0 ? through : fitted(through));
     },
-    fit: () => set(fitFrame(now(), whole)),
+    fit: () => set(fitted(now())),
     lookAt(at) {
       const view = now();
       set(keptInSight(centredOn({ ...view, zoom: Math.max(view.zoom, LOOK_ZOOM) }, at), sheet));
     },
   };
+}
+
+/** A view of the section, turned as the cleaned-up picture is; one that slants is seen as it was scanned. */
+function sectionAsShown(section: LinearMap, asShown: PlaneMap | null): PlaneMap {
+  if (asShown === null || !isAffine(asShown)) return section;
+  return planeProduct(linearAt(asShown, 0, 0), section);
 }

@@ -1,10 +1,20 @@
 import { type ScreenPx, type SheetPx, screenPx, sheetPx } from '#shared/compute/frames.ts';
-import { determinantOf, inverted, type LinearMap, mapped } from '#shared/compute/linear-map.ts';
+import { inverted, mapped } from '#shared/compute/linear-map.ts';
+import {
+  areaScaleAt,
+  isAffine,
+  linearAt,
+  type PlaneMap,
+  type ProjectiveMap,
+  planeInverse,
+  planeProduct,
+  throughPlane,
+} from '#shared/compute/plane-map.ts';
 
 /**
- * The window through which the sheet is seen. Screen pixels are CSS pixels. The sheet may be seen through a linear map,
- * as the natural or the transformed section: what the map makes of the sheet is the picture, and places on the sheet
- * are mapped back from it, so that tracing goes on as before.
+ * The window through which the sheet is seen. Screen pixels are CSS pixels. The sheet may be seen through a map,
+ * as the natural or the transformed section or as a cleaned-up picture has it: what the map makes of the sheet is the
+ * picture, and places on the sheet are mapped back from it, so that tracing goes on as before.
  */
 export type Viewport = {
   /** Screen pixels per pixel of the picture. */
@@ -12,12 +22,18 @@ export type Viewport = {
   /** Place of the picture seen at the view's top-left corner; the picture is the sheet where there is no map. */
   readonly origin: SheetPx;
   /** Sheet pixels to pixels of the picture; without one the sheet is seen as it is drawn. */
-  readonly seenAs?: LinearMap;
+  readonly seenAs?: PlaneMap;
   readonly widthPx: number;
   readonly heightPx: number;
 };
 
-export type SheetSize = { readonly widthPx: number; readonly heightPx: number };
+/** What is to be seen, with the map from its pixels to the sheet's where it is not the sheet's own raster. */
+export type SheetSize = {
+  readonly widthPx: number;
+  readonly heightPx: number;
+  readonly toBase?: ProjectiveMap | null;
+  readonly fromBase?: ProjectiveMap | null;
+};
 /** `[left, top, width, height]` in sheet pixels. */
 export type SheetFrame = readonly [number, number, number, number];
 
@@ -31,36 +47,68 @@ const FIT_MARGIN_PX = 16;
 const IN_SIGHT_PX = 60;
 
 export function toScreen(view: Viewport, at: SheetPx): ScreenPx {
-  const [x, y] = view.seenAs === undefined ? at : mapped(view.seenAs, at[0], at[1]);
+  const [x, y] = view.seenAs === undefined ? at : throughPlane(view.seenAs, at[0], at[1]);
   return screenPx((x - view.origin[0]) * view.zoom, (y - view.origin[1]) * view.zoom);
 }
 
 export function toSheet(view: Viewport, at: ScreenPx): SheetPx {
   const x = at[0] / view.zoom + view.origin[0];
   const y = at[1] / view.zoom + view.origin[1];
-  return view.seenAs === undefined ? sheetPx(x, y) : sheetPx(...mapped(inverted(view.seenAs), x, y));
+  return view.seenAs === undefined
+    ? sheetPx(x, y)
+    : sheetPx(...throughPlane(planeInverse(view.seenAs), x, y));
 }
 
 /** The part of the sheet's plane that is seen, `[left, top, width, height]`: about all of it through a slanting map. */
 export function seenFrame(view: Viewport): SheetFrame {
-  const seen: SheetFrame = [
-    view.origin[0],
-    view.origin[1],
-    view.widthPx / view.zoom,
-    view.heightPx / view.zoom,
-  ];
-  return view.seenAs === undefined ? seen : frameThrough(inverted(view.seenAs), seen);
+  const seen = seenOfPicture(view);
+  return view.seenAs === undefined ? seen : frameThrough(planeInverse(view.seenAs), seen);
+}
+
+function seenOfPicture({ origin, zoom, widthPx, heightPx }: Viewport): SheetFrame {
+  return [origin[0], origin[1], widthPx / zoom, heightPx / zoom];
+}
+
+/** From pixels of the raster that is shown to those of the picture; null where they are the same. */
+export function rasterMap(view: Viewport, { toBase, fromBase }: SheetSize): PlaneMap | null {
+  if (!toBase) return view.seenAs ?? null;
+  if (view.seenAs === fromBase) return null;
+  return view.seenAs === undefined ? toBase : planeProduct(view.seenAs, toBase);
+}
+
+/** The part of the raster's plane that is seen, in its pixels. */
+export function seenOfRaster(view: Viewport, sheet: SheetSize): SheetFrame {
+  const seen = seenOfPicture(view);
+  const map = rasterMap(view, sheet);
+  if (map === null) return seen;
+  // What lies beyond the picture of a slanting view may lie beyond its horizon.
+  const within = isAffine(map) ? seen : shared(seen, extentOf(view, sheet));
+  return frameThrough(planeInverse(map), within);
+}
+
+/** The whole of what there is to be seen, in pixels of the picture. */
+function extentOf(view: Viewport, sheet: SheetSize): SheetFrame {
+  return frameThrough(rasterMap(view, sheet) ?? undefined, [0, 0, sheet.widthPx, sheet.heightPx]);
+}
+
+/** What two frames share; a frame without area at the edge of the second where they share nothing. */
+function shared(a: SheetFrame, b: SheetFrame): SheetFrame {
+  const left = Math.min(Math.max(a[0], b[0]), b[0] + b[2]);
+  const top = Math.min(Math.max(a[1], b[1]), b[1] + b[3]);
+  const right = Math.max(left, Math.min(a[0] + a[2], b[0] + b[2]));
+  const bottom = Math.max(top, Math.min(a[1] + a[3], b[1] + b[3]));
+  return [left, top, right - left, bottom - top];
 }
 
 /** The upright frame about what a map makes of a frame. */
-function frameThrough(map: LinearMap | undefined, frame: SheetFrame): SheetFrame {
+export function frameThrough(map: PlaneMap | undefined, frame: SheetFrame): SheetFrame {
   if (map === undefined) return frame;
   const [left, top, width, height] = frame;
   const corners = [
-    mapped(map, left, top),
-    mapped(map, left + width, top),
-    mapped(map, left, top + height),
-    mapped(map, left + width, top + height),
+    throughPlane(map, left, top),
+    throughPlane(map, left + width, top),
+    throughPlane(map, left, top + height),
+    throughPlane(map, left + width, top + height),
   ];
   const xs = corners.map(([x]) => x);
   const ys = corners.map(([, y]) => y);
@@ -68,21 +116,40 @@ function frameThrough(map: LinearMap | undefined, frame: SheetFrame): SheetFrame
   return [x, y, Math.max(...xs) - x, Math.max(...ys) - y];
 }
 
-/** Screen pixels per sheet pixel, the geometric mean where they differ with the direction. */
-export function sheetZoom({ zoom, seenAs }: Pick<Viewport, 'zoom' | 'seenAs'>): number {
-  return seenAs === undefined ? zoom : zoom * Math.sqrt(Math.abs(determinantOf(seenAs)));
+/** Screen pixels per sheet pixel in the middle of the view, the mean where they differ with the direction. */
+export function sheetZoom(view: Viewport): number {
+  const { zoom, seenAs } = view;
+  if (seenAs === undefined) return zoom;
+  const [x, y] = toSheet(view, screenPx(view.widthPx / 2, view.heightPx / 2));
+  return zoom * Math.sqrt(Math.abs(areaScaleAt(seenAs, x, y)));
 }
 
 /** The same place in the middle, through another map or none. */
-export function seenThrough(view: Viewport, seenAs: LinearMap | null, sheet: SheetSize): Viewport {
+export function seenThrough(view: Viewport, seenAs: PlaneMap | null, sheet: SheetSize): Viewport {
   const { seenAs: _, ...window } = view;
   const middle = toSheet(view, screenPx(view.widthPx / 2, view.heightPx / 2));
   return keptInSight(centredOn(seenAs === null ? window : { ...window, seenAs }, middle), sheet);
 }
 
+/** A place so many sheet pixels from another, in a direction as it is seen on screen. */
+export function steppedOnScreen(view: Viewport, from: SheetPx, dx: number, dy: number): SheetPx {
+  if (view.seenAs === undefined) return sheetPx(from[0] + dx, from[1] + dy);
+  const [x, y] = mapped(inverted(linearAt(view.seenAs, from[0], from[1])), dx, dy);
+  const scale = Math.hypot(dx, dy) / Math.hypot(x, y);
+  return sheetPx(from[0] + scale * x, from[1] + scale * y);
+}
+
 /** A view in which a frame of the sheet is seen whole and centred. */
 export function fitFrame(view: Viewport, frame: SheetFrame): Viewport {
-  const [left, top, width, height] = frameThrough(view.seenAs, frame);
+  return fitPicture(view, frameThrough(view.seenAs, frame));
+}
+
+/** A view in which the whole of what there is to be seen is seen. */
+export function fitSheet(view: Viewport, sheet: SheetSize): Viewport {
+  return fitPicture(view, extentOf(view, sheet));
+}
+
+function fitPicture(view: Viewport, [left, top, width, height]: SheetFrame): Viewport {
   const margin = Math.min(FIT_MARGIN_PX, view.widthPx / 10, view.heightPx / 10);
   const zoom = heldZoom(
     Math.min((view.widthPx - 2 * margin) / width, (view.heightPx - 2 * margin) / height),
@@ -91,13 +158,9 @@ export function fitFrame(view: Viewport, frame: SheetFrame): Viewport {
   return centredOnPicture({ ...view, zoom }, left + width / 2, top + height / 2);
 }
 
-export function fitSheet(view: Viewport, sheet: SheetSize): Viewport {
-  return fitFrame(view, [0, 0, sheet.widthPx, sheet.heightPx]);
-}
-
 /** The view moved so that a place of the sheet is seen in its middle. */
 export function centredOn(view: Viewport, at: SheetPx): Viewport {
-  const [x, y] = view.seenAs === undefined ? at : mapped(view.seenAs, at[0], at[1]);
+  const [x, y] = view.seenAs === undefined ? at : throughPlane(view.seenAs, at[0], at[1]);
   return centredOnPicture(view, x, y);
 }
 
@@ -131,7 +194,7 @@ export function resized(view: Viewport, widthPx: number, heightPx: number, sheet
 
 /** The view with a part of the sheet held in sight, so that it cannot be lost. */
 export function keptInSight(view: Viewport, sheet: SheetSize): Viewport {
-  const [left, top, width, height] = frameThrough(view.seenAs, [0, 0, sheet.widthPx, sheet.heightPx]);
+  const [left, top, width, height] = extentOf(view, sheet);
   const least = IN_SIGHT_PX / view.zoom;
   const x = left + heldAxis(view.origin[0] - left, view.widthPx / view.zoom, width, least);
   const y = top + heldAxis(view.origin[1] - top, view.heightPx / view.zoom, height, least);

@@ -1,7 +1,7 @@
 import { fixedText, plainText } from '#client/lib/figures.ts';
 import { soilText } from '#client/text/desk-forms.ts';
 import { sectionPt } from '#shared/compute/frames.ts';
-import type { LinearMap } from '#shared/compute/linear-map.ts';
+import type { PlaneMap } from '#shared/compute/plane-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import {
   type DocumentEntity,
@@ -20,7 +20,7 @@ import type { SheetFrame } from '../model/viewport.ts';
 import { guideItems } from './guide-items.ts';
 import { handledVertices } from './handle-spacing.ts';
 import { COLOURS, lookOf, tracedLook, unfinishedLook, weighted } from './line-look.ts';
-import { placeWords } from './place-words.ts';
+import { LABEL_PREFIX, type PlacedScene, placeWords } from './place-words.ts';
 import { profileItems } from './profile-items.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
 import { itemsThrough } from './seen-through.ts';
@@ -51,7 +51,7 @@ export type SceneInput = {
   readonly zoom: number;
   readonly lineWeight: LineWeight;
   /** Sheet pixels to pixels of the picture, as through which the sheet is seen; null = as it is drawn. */
-  readonly seenAs: LinearMap | null;
+  readonly seenAs: PlaneMap | null;
   /** The section's part of the sheet, outlined when the sheet holds more; null = the whole sheet. */
   readonly frame: SheetFrame | null;
   /** Vertices of a line that were clicked; left out where nothing is drawn. */
@@ -65,6 +65,11 @@ const NO_OFFSET = [0, 0] as const;
 
 /** Everything the sheet shows over the scan, from the bottom up: lines, labels, points, handles, notes. */
 export function buildScene(input: SceneInput): SceneItem[] {
+  return buildSheetScene(input).items;
+}
+
+/** As `buildScene`, with the labels for which there is no room: each is shown when its line is pointed at. */
+export function buildSheetScene(input: SceneInput): PlacedScene {
   const shown = shownEntities(input);
   const lines = shown.flatMap((entity) => lineItem(entity, input));
   lines.sort((a, b) => Number(a.strong) - Number(b.strong));
@@ -144,7 +149,10 @@ function labelItems(lines: readonly SceneLine[], input: SceneInput): SceneMark[]
     if (text === null) return [];
     const { strong } = line;
     return [
-      mark(`label ${line.id}`, 'label', lowerEnd(line.points), COLOURS.equipotential, { text, strong }),
+      mark(`${LABEL_PREFIX}${line.id}`, 'label', lowerEnd(line.points), COLOURS.equipotential, {
+        text,
+        strong,
+      }),
     ];
   });
 }

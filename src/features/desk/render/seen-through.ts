@@ -1,38 +1,38 @@
-import { type LinearMap, mapped } from '#shared/compute/linear-map.ts';
+import { type PlaneMap, throughPlane } from '#shared/compute/plane-map.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { SceneItem } from './scene.ts';
 
 /** Points already mapped: a line that has not changed is the same line in the next picture too. */
-const kept = new WeakMap<readonly SheetPoint[], { map: LinearMap; points: readonly SheetPoint[] }>();
+const kept = new WeakMap<readonly SheetPoint[], { map: PlaneMap; points: readonly SheetPoint[] }>();
 const keptOutlines = new WeakMap<
   readonly (readonly SheetPoint[])[],
-  { map: LinearMap; outlines: readonly (readonly SheetPoint[])[] }
+  { map: PlaneMap; outlines: readonly (readonly SheetPoint[])[] }
 >();
 
 /**
- * Items of the picture where a linear map puts them. Only places are mapped: lines keep their width, their dashes and
+ * Items of the picture where a map puts them. Only places are mapped: lines keep their width, their dashes and
  * hatching, and words stay upright.
  */
-export function itemsThrough(items: readonly SceneItem[], map: LinearMap | null): readonly SceneItem[] {
+export function itemsThrough(items: readonly SceneItem[], map: PlaneMap | null): readonly SceneItem[] {
   if (map === null) return items;
   return items.map((item): SceneItem => {
     if (item.shape === 'line') return { ...item, points: pointsThrough(item.points, map) };
     if (item.shape === 'area') return { ...item, outlines: outlinesThrough(item.outlines, map) };
-    return { ...item, at: mapped(map, ...item.at) };
+    return { ...item, at: throughPlane(map, ...item.at) };
   });
 }
 
-function pointsThrough(points: readonly SheetPoint[], map: LinearMap): readonly SheetPoint[] {
+function pointsThrough(points: readonly SheetPoint[], map: PlaneMap): readonly SheetPoint[] {
   const held = kept.get(points);
   if (held?.map === map) return held.points;
-  const moved = points.map(([x, y]): SheetPoint => mapped(map, x, y));
+  const moved = points.map(([x, y]): SheetPoint => throughPlane(map, x, y));
   kept.set(points, { map, points: moved });
   return moved;
 }
 
 function outlinesThrough(
   outlines: readonly (readonly SheetPoint[])[],
-  map: LinearMap,
+  map: PlaneMap,
 ): readonly (readonly SheetPoint[])[] {
   const held = keptOutlines.get(outlines);
   if (held?.map === map) return held.outlines;

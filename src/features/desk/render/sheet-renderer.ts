@@ -1,4 +1,5 @@
 import type { SheetDto } from '#shared/contract/drawings.ts';
+import type { SheetRaster } from '../model/sheet-raster.ts';
 import type { Viewport } from '../model/viewport.ts';
 import { type LoadedTile, tileLoader } from './load-tile.ts';
 import { AS_SCANNED, paintWithLook, type ScanLook } from './scan-look.ts';
@@ -20,11 +21,14 @@ const MARGIN_DEVICE_PX = 400;
 const REST_MS = 250;
 
 export type SheetRenderer = {
+  readonly raster: SheetRaster;
   setView(view: Viewport): void;
   /** What rests: everything but what is being worked on. */
   showBase(items: readonly SceneItem[]): void;
   /** What is being worked on: the chosen line, its handles, the band to the pointer. */
   showActive(items: readonly SceneItem[]): void;
+  /** Finer tiles of the sheet have been made. */
+  sharpen(tiles: SheetDto['tiles']): void;
   /** How the scan is shown; the traces over it stay as they are. */
   setScanLook(look: ScanLook): void;
   /** A second, magnified view on the same tiles; `paint` is called again whenever a tile arrives. */
@@ -39,7 +43,9 @@ export type SheetRenderer = {
  * Shows the sheet and what lies over it in a host element: the tiles below, fabric above, both under the same
  * viewport. It draws only when something has changed and at most once a frame.
  */
-export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRenderer {
+export function createSheetRenderer(host: HTMLElement, opened: SheetRaster): SheetRenderer {
+  // A copy, whose tiles become finer while the sheet is being prepared.
+  const sheet = { ...opened };
   const { fonts } = host.ownerDocument;
   const extraViews = new Map<string, () => void>();
   let view: Viewport | null = null;
@@ -95,12 +101,19 @@ export function createSheetRenderer(host: HTMLElement, sheet: SheetDto): SheetRe
   // A canvas takes a fallback font for one that is still loading, and does not draw again by itself.
   fonts.addEventListener('loadingdone', drawTexts);
 
+  function setView(next: Viewport): void {
+    view = next;
+    if (tiles.show(next)) store.want('main', wantedTiles(sheet, next, ratio(), AHEAD_TILES));
+    due(base.show(next), active.show(next));
+    centreAtRest();
+  }
+
   return {
-    setView(next) {
-      view = next;
-      if (tiles.show(next)) store.want('main', wantedTiles(sheet, next, ratio(), AHEAD_TILES));
-      due(base.show(next), active.show(next));
-      centreAtRest();
+    raster: opened,
+    setView,
+    sharpen(finer) {
+      sheet.tiles = finer;
+      if (view !== null) setView(view);
     },
     showBase: (items) => due(base.showItems(items), false),
     showActive: (items) => due(false, active.showItems(items)),

@@ -1,6 +1,6 @@
-import { IDENTITY } from '#shared/compute/linear-map.ts';
 import type { SheetFrame, Viewport } from '../model/viewport.ts';
-import { seenFrame } from '../model/viewport.ts';
+import { seenOfRaster } from '../model/viewport.ts';
+import { layerTransform } from './layer-transform.ts';
 import type { LoadedTile } from './load-tile.ts';
 import { AS_SCANNED, paperColour, type ScanLook, scanFilter, veilColour } from './scan-look.ts';
 import {
@@ -80,11 +80,7 @@ export function createTileLayer(
   return {
     show(next) {
       view = next;
-      const x = Math.round(-next.origin[0] * next.zoom * devicePixelRatioNow()) / devicePixelRatioNow();
-      const y = Math.round(-next.origin[1] * next.zoom * devicePixelRatioNow()) / devicePixelRatioNow();
-      const [a, b, c, d] = next.seenAs ?? IDENTITY;
-      // CSS writes a matrix column by column.
-      paper.style.transform = `matrix(${a}, ${c}, ${b}, ${d}, ${x}, ${y})`;
+      paper.style.transform = layerTransform(next, sheet, devicePixelRatioNow());
       const key = layoutKey(sheet, next);
       if (key === laidOut) return false;
       laidOut = key;
@@ -108,7 +104,7 @@ export function createTileLayer(
 function layoutKey(sheet: TiledSheet, view: Viewport): string {
   const z = levelFor(sheet, view.zoom * devicePixelRatioNow());
   const side = sheet.tiles.tileSizePx / levelScale(sheet, z);
-  const [left, top, width, height] = seenFrame(view);
+  const [left, top, width, height] = seenOfRaster(view, sheet);
   const range = [left, top, left + width, top + height].map((edge) => Math.floor(edge / side));
   return `${view.zoom} ${z} ${range.join(' ')} ${view.widthPx} ${view.heightPx}`;
 }
@@ -116,7 +112,7 @@ function layoutKey(sheet: TiledSheet, view: Viewport): string {
 /** Tiles in sight that are there; for each that is not, the nearest coarser one. Coarse ones first. */
 function tilesToShow(sheet: TiledSheet, store: TileStore<LoadedTile>, view: Viewport, ratio: number): Tile[] {
   const found = new Map<string, Tile>();
-  for (const tile of tilesIn(sheet, levelFor(sheet, view.zoom * ratio), seenFrame(view))) {
+  for (const tile of tilesIn(sheet, levelFor(sheet, view.zoom * ratio), seenOfRaster(view, sheet))) {
     for (let z = tile.z; z >= 0; z -= 1) {
       const candidate = tileAbove(tile, z);
       if (store.get(candidate) === null) continue;

@@ -1,5 +1,4 @@
-import { sheetPx } from '#shared/compute/frames.ts';
-import { seenFrame, toScreen, type Viewport } from '../model/viewport.ts';
+import { seenOfRaster, type Viewport } from '../model/viewport.ts';
 import type { LoadedTile } from './load-tile.ts';
 import {
   levelFor,
@@ -24,7 +23,7 @@ export function wantedTiles(
   ring: number,
 ): Tile[] {
   const z = levelFor(sheet, view.zoom * devicePixelRatio);
-  const frame = seenFrame(view);
+  const frame = seenOfRaster(view, sheet);
   const inSight = tilesIn(sheet, z, frame);
   const seen = new Set(inSight.map((tile) => `${tile.x}_${tile.y}`));
   const around =
@@ -33,13 +32,13 @@ export function wantedTiles(
 }
 
 /**
- * Paints a small part of the sheet into a canvas, for the magnified view, as far as its tiles are there; where one is
- * missing, the next coarser one stands in.
+ * Paints a small part of the raster into a canvas, for the magnified view, as far as its tiles are there; where one is
+ * missing, the next coarser one stands in. The view must show the raster as it is.
  */
 export function paintTiles(
   context: CanvasRenderingContext2D,
   sheet: TiledSheet,
-  store: TileStore<LoadedTile>,
+  store: Pick<TileStore<LoadedTile>, 'get'>,
   view: Viewport,
   devicePixelRatio: number,
 ): void {
@@ -52,14 +51,14 @@ export function paintTiles(
   context.fillRect(left, top, right - left, bottom - top);
   context.imageSmoothingEnabled = view.zoom * devicePixelRatio < SQUARES_FROM_ZOOM;
   const z = levelFor(sheet, view.zoom * devicePixelRatio);
-  for (const tile of tilesIn(sheet, z, seenFrame(view)))
+  for (const tile of tilesIn(sheet, z, seenOfRaster(view, sheet)))
     paintTile(context, sheet, store, view, devicePixelRatio, tile);
 }
 
 function paintTile(
   context: CanvasRenderingContext2D,
   sheet: TiledSheet,
-  store: TileStore<LoadedTile>,
+  store: Pick<TileStore<LoadedTile>, 'get'>,
   view: Viewport,
   ratio: number,
   tile: Tile,
@@ -98,6 +97,6 @@ function paintPart(
 }
 
 function onDevice(view: Viewport, x: number, y: number, ratio: number): [number, number] {
-  const [sx, sy] = toScreen(view, sheetPx(x, y));
-  return [Math.round(sx * ratio), Math.round(sy * ratio)];
+  const scale = view.zoom * ratio;
+  return [Math.round((x - view.origin[0]) * scale), Math.round((y - view.origin[1]) * scale)];
 }
