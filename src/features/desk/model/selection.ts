@@ -42,7 +42,8 @@ export function prunedSelection(selection: Selection, document: FlowNetDocument)
   if (selection.kind === 'none') return selection;
   if (selection.kind === 'several' || selection.ids.length > 1) {
     const held = selectSeveral(selection.ids, document);
-    return held.kind === 'several' && held.ids.length === selection.ids.length ? selection : held;
+    const asBefore = selection.kind === 'several' && held.ids.length === selection.ids.length;
+    return asBefore ? selection : held;
   }
   const ids = selection.ids.filter((id) => document.entities[id]?.value.kind === selection.kind);
   if (ids.length === 0) return NO_SELECTION;
