@@ -42,7 +42,7 @@ export function prunedSelection(selection: Selection, document: FlowNetDocument)
   if (selection.kind === 'none') return selection;
   if (selection.kind === 'several' || selection.ids.length > 1) {
     const held = selectSeveral(selection.ids, document);
-    const asBefore = selection.kind === 'several' && held.ids.length === selection.ids.length;
+    const asBefore = held.kind === selection.kind && held.ids.length === selection.ids.length;
     return asBefore ? selection : held;
   }
   const ids = selection.ids.filter((id) => document.entities[id]?.value.kind === selection.kind);
