@@ -2,14 +2,12 @@ import { basicParabolaNet } from '#shared/compute/exact/basic-parabola-net.ts';
 import type { ExactNet } from '#shared/compute/exact/exact-net.ts';
 import { flatApronNet } from '#shared/compute/exact/flat-apron-net.ts';
 import { sheetPileNet } from '#shared/compute/exact/sheet-pile-net.ts';
-import { createNetReader, type NetReader } from '#shared/compute/net-reader.ts';
-import { prepareNet } from '#shared/compute/prepare-net.ts';
+import type { NetReader } from '#shared/compute/net-reader.ts';
 import { readNet } from '#shared/compute/read-net.ts';
-import { readSetOut } from '#shared/compute/set-out.ts';
-import { singleInputs } from '#shared/compute/single-inputs.ts';
 import { conjugateGradient, type SparseRows } from '#shared/compute/solve/conjugate-gradient.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import { type Bench, type BenchRow, percentile, repeated, rowOf } from './bench.ts';
+import { builtEngine } from './built-engine.ts';
 import { placesOver, tracedDocument } from './traced-exact-net.ts';
 
 const RUNS = 15;
@@ -68,8 +66,9 @@ async function timed(work: () => unknown): Promise<number> {
 export const reread200: Bench = {
   name: 'reread-200',
   about:
-    '200 points of a net of 60 lines read again after a vertex was dragged, beside reading the net from scratch',
+    '200 points of a net of 60 lines read again after a vertex was dragged, by the code as built for the desk, beside reading the net from scratch',
   async run(): Promise<BenchRow[]> {
+    const { createNetReader, readNet } = await builtEngine();
     const document = sixtyLines();
     const reader = createNetReader();
     reader.read(document);
@@ -89,6 +88,7 @@ export const wholeNet60: Bench = {
   name: 'whole-net-60',
   about: 'a net of 60 lines with 200 points read from scratch',
   async run(): Promise<BenchRow[]> {
+    const { readNet } = await builtEngine();
     const document = sixtyLines();
     const copies = Array.from({ length: RUNS + 1 }, () => structuredClone(document));
     const values = await repeated(RUNS, () => timed(() => readNet(copies.pop()!)));
@@ -100,6 +100,7 @@ export const fieldSolve: Bench = {
   name: 'field-solve',
   about: 'all strips of that net meshed and solved, beside bare five-point grids of as many unknowns',
   async run(): Promise<BenchRow[]> {
+    const { prepareNet, readSetOut, singleInputs } = await builtEngine();
     const document = sixtyLines();
     const setOut = readSetOut(document);
     if (setOut.map === null) throw new Error('The net of the bench is not set out.');

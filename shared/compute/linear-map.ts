@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 /** A linear map of the plane, row by row: (x, y) ↦ (a·x + b·y, c·x + d·y). */
 export type LinearMap = readonly [a: number, b: number, c: number, d: number];
 
@@ -37,7 +38,7 @@ export function scaledBy([a, b, c, d]: LinearMap, factor: number): LinearMap {
  * s = |(a − d, c + b)|. Source: closed form of the 2 × 2 singular values (Blinn 1996, Consider the lowly 2×2 matrix).
  */
 export function greatestStretch([a, b, c, d]: LinearMap): number {
-  return (Math.hypot(a + d, c - b) + Math.hypot(a - d, c + b)) / 2;
+  return (lengthOfVector(a + d, c - b) + lengthOfVector(a - d, c + b)) / 2;
 }
 
 /** True when no entry of two maps differs by more than `tolerance`. */

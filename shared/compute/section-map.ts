@@ -1,4 +1,5 @@
 import { type SectionPt, type SheetPx, sectionPt, sheetPx } from '#shared/compute/frames.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { determinantOf, inverted, type LinearMap, mapped } from '#shared/compute/linear-map.ts';
 import {
   type Similarity,
@@ -60,7 +61,7 @@ export function sectionMapOfFit(fit: SectionFit, elevationPerPx: number | null =
   const { linear, sheetOrigin, sectionOrigin } = fit;
   const back = inverted(linear);
   const [upX, upY] = mapped(back, 0, 1);
-  const upLength = Math.hypot(upX, upY);
+  const upLength = lengthOfVector(upX, upY);
   return {
     toSection: ([x, y]) => {
       const [offset, elevation] = mapped(linear, x - sheetOrigin[0], y - sheetOrigin[1]);
@@ -71,9 +72,9 @@ export function sectionMapOfFit(fit: SectionFit, elevationPerPx: number | null =
       return sheetPx(sheetOrigin[0] + x, sheetOrigin[1] + y);
     },
     unitsPerPx: Math.sqrt(Math.abs(determinantOf(linear))),
-    elevationPerPx: elevationPerPx ?? Math.hypot(linear[2], linear[3]),
+    elevationPerPx: elevationPerPx ?? lengthOfVector(linear[2], linear[3]),
     up: [upX / upLength, upY / upLength],
     linear,
-    lengthPerPxAlong: (dx, dy) => Math.hypot(...mapped(linear, dx, dy)) / Math.hypot(dx, dy),
+    lengthPerPxAlong: (dx, dy) => lengthOfVector(...mapped(linear, dx, dy)) / lengthOfVector(dx, dy),
   };
 }

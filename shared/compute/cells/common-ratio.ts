@@ -1,4 +1,5 @@
 import type { NetCell } from '#shared/compute/cells/cells.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
 /** What is known of a net besides its lines, where cells are compared with one another. */
@@ -42,7 +43,7 @@ export function seriesK(path: readonly Pair[], facts: CellFacts): number | null 
   let resistance = 0;
   for (let i = 1; i < path.length; i += 1) {
     const [[fromX, fromY], [toX, toY]] = [path[i - 1]!, path[i]!];
-    const part = Math.hypot(toX - fromX, toY - fromY) / ASKED;
+    const part = lengthOfVector(toX - fromX, toY - fromY) / ASKED;
     for (let j = 0; j < ASKED; j += 1) {
       const t = (j + 0.5) / ASKED;
       const k = facts.relativeK([fromX + t * (toX - fromX), fromY + t * (toY - fromY)]);
@@ -86,7 +87,7 @@ export function middleValue(values: readonly number[], expected: number): number
  * `accuracyPx`: σ in working pixels; dimensionless.
  */
 export function tremorOf({ measures }: NetCell, accuracyPx: number): number {
-  return accuracyPx * Math.hypot(1 / measures.length, 1 / measures.width);
+  return accuracyPx * lengthOfVector(1 / measures.length, 1 / measures.width);
 }
 
 /** The ratio by which cells are judged, and the middle one measured, B/L; `measured` null while there is no cell. */

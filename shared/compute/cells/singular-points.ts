@@ -1,9 +1,9 @@
 import { angleBetween } from '#shared/compute/cells/quadrilateral.ts';
 import {
+  distanceToPolyline,
   firstOf,
   lastOf,
   lengthOf,
-  nearestOnPolyline,
   type Polyline,
   pointAlong,
 } from '#shared/compute/geometry/polyline.ts';
@@ -40,9 +40,7 @@ export function singularPoints({ lines, potentials, reach }: NetModel, accuracyP
     ...walls.flatMap((wall, i) => {
       const others = walls.filter((_, k) => k !== i);
       return endsOf(wall, chord).flatMap((end) => {
-        const meets = [...others, ...faces].filter(
-          (shape) => nearestOnPolyline(shape, ...end.at).distance <= reach,
-        );
+        const meets = [...others, ...faces].filter((shape) => distanceToPolyline(shape, ...end.at) <= reach);
         return meets.length === 0 || others.some((other) => turnsInto(end, other, chord, reach))
           ? [end.at]
           : [];
@@ -68,7 +66,7 @@ function turnsInto(end: End, other: Polyline, chord: number, reach: number): boo
     ({ at }) => Math.hypot(at[0] - end.at[0], at[1] - end.at[1]) <= reach,
   );
   // Where it ends on the run of another wall the two always make a corner.
-  if (met === undefined) return nearestOnPolyline(other, ...end.at).distance <= reach;
+  if (met === undefined) return distanceToPolyline(other, ...end.at) <= reach;
   return 180 - angleBetween(end.inward, met.inward) > CORNER_DEG;
 }
 

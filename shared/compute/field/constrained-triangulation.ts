@@ -40,7 +40,7 @@ export function triangulate(
 /** Keeps an outgoing half-edge for each vertex while diagonals are swapped. */
 class EdgeInserter {
   private readonly leaving: Int32Array;
-  private readonly fixed = new Set<string>();
+  private readonly fixed = new Set<number>();
 
   constructor(
     private readonly xy: Float64Array,
@@ -52,7 +52,7 @@ class EdgeInserter {
   }
 
   insert(from: number, to: number): boolean {
-    this.fixed.add(from < to ? `${from},${to}` : `${to},${from}`);
+    this.fixed.add(this.keyOf(from, to));
     if (this.find(from, to) >= 0) return true;
     const crossed = this.edgesCrossed(from, to);
     if (crossed === null) return false;
@@ -73,11 +73,22 @@ class EdgeInserter {
 
   /** A half-edge between two vertices, in either direction; −1 when there is none. */
   private find(a: number, b: number): number {
-    for (const e of this.around(a)) {
-      if (this.triangles[nextOf(e)] === b) return e;
-      if (this.triangles[previousOf(e)] === b) return previousOf(e);
+    const { triangles, halfedges } = this;
+    const start = this.leaving[a]!;
+    // Most edges are met on the way about the vertex one way round; at the hull it is gone round the other way too.
+    for (let e = start; e >= 0; ) {
+      if (triangles[nextOf(e)] === b) return e;
+      const into = previousOf(e);
+      if (triangles[into] === b) return into;
+      e = halfedges[into]!;
+      if (e === start) return -1;
     }
-    return -1;
+    return this.around(a).find((e) => triangles[nextOf(e)] === b) ?? -1;
+  }
+
+  private keyOf(a: number, b: number): number {
+    const count = this.leaving.length;
+    return a < b ? a * count + b : b * count + a;
   }
 
   /** Half-edges that leave a vertex, one for each triangle about it. */
@@ -130,7 +141,7 @@ class EdgeInserter {
     const crossed: Array<[number, number]> = [];
     for (let e = first; ; ) {
       const [a, b] = [triangles[e]!, triangles[nextOf(e)]!];
-      if (this.fixed.has(a < b ? `${a},${b}` : `${b},${a}`)) return null;
+      if (this.fixed.has(this.keyOf(a, b))) return null;
       crossed.push([a, b]);
       const other = halfedges[e]!;
       if (other < 0 || crossed.length > triangles.length) return null;

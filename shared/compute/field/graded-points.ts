@@ -19,13 +19,17 @@ export function gradedPoints(ring: Ring, nodes: Float64Array, spacing: Float64Ar
   return tree.pointsIn(ring);
 }
 
+/** Squares that there is room for at first. */
+const FIRST_ROOM = 4096;
+
 /** Squares by number: middle, half side, first of four children (0: none), whether a node lies in it. */
 class QuadTree {
-  private readonly x: number[] = [];
-  private readonly y: number[] = [];
-  private readonly half: number[] = [];
-  private readonly child: number[] = [];
-  private readonly held: boolean[] = [];
+  private count = 0;
+  private x = new Float64Array(FIRST_ROOM);
+  private y = new Float64Array(FIRST_ROOM);
+  private half = new Float64Array(FIRST_ROOM);
+  private child = new Int32Array(FIRST_ROOM);
+  private held = new Uint8Array(FIRST_ROOM);
 
   constructor({ box }: Ring) {
     const half = 0.5 * Math.max(box.maxX - box.minX, box.maxY - box.minY);
@@ -35,25 +39,28 @@ class QuadTree {
 
   part(x: number, y: number, spacing: number): void {
     let square = this.leafAt(x, y);
-    while (2 * this.half[square]! > spacing && this.half.length < MOST_SQUARES) {
+    while (2 * this.half[square]! > spacing && this.count < MOST_SQUARES) {
       this.split(square);
       square = this.leafAt(x, y);
     }
   }
 
   occupy(x: number, y: number): void {
-    this.held[this.leafAt(x, y)] = true;
+    this.held[this.leafAt(x, y)] = 1;
   }
 
   /** Parts squares until none is more than twice as large as one beside it. */
   balance(): void {
     const open = this.leaves();
-    while (open.length > 0 && this.half.length < MOST_SQUARES) {
+    while (open.length > 0 && this.count < MOST_SQUARES) {
       const square = open.pop()!;
       if (this.child[square] !== 0) continue;
-      const [x, y, half] = [this.x[square]!, this.y[square]!, this.half[square]!];
-      for (const [dx, dy] of BESIDE) {
-        const other = this.leafAt(x + 1.5 * half * dx, y + 1.5 * half * dy, 2.5 * half);
+      const x = this.x[square]!;
+      const y = this.y[square]!;
+      const half = this.half[square]!;
+      for (let side = 0; side < 4; side += 1) {
+        const along = side % 2 === 0 ? -1.5 * half : 1.5 * half;
+        const other = this.leafAt(side < 2 ? x + along : x, side < 2 ? y : y + along, 2.5 * half);
         if (this.half[other]! <= 2.5 * half) continue;
         this.split(other);
         const first = this.child[other]!;
@@ -67,7 +74,7 @@ class QuadTree {
     const rows = new RingRows(ring);
     const points: number[] = [];
     for (const square of this.leaves()) {
-      if (this.held[square]) continue;
+      if (this.held[square] === 1) continue;
       const reach = OFF_MIDDLE * this.half[square]!;
       const x = this.x[square]! + reach * scatter(square);
       const y = this.y[square]! + reach * scatter(square + 0.5);
@@ -78,7 +85,7 @@ class QuadTree {
 
   private leaves(): number[] {
     const leaves: number[] = [];
-    for (let i = 0; i < this.child.length; i += 1) if (this.child[i] === 0) leaves.push(i);
+    for (let i = 0; i < this.count; i += 1) if (this.child[i] === 0) leaves.push(i);
     return leaves;
   }
 
@@ -92,8 +99,10 @@ class QuadTree {
   }
 
   private split(square: number): void {
-    const [x, y, q] = [this.x[square]!, this.y[square]!, this.half[square]! / 2];
-    this.child[square] = this.half.length;
+    const x = this.x[square]!;
+    const y = this.y[square]!;
+    const q = this.half[square]! / 2;
+    this.child[square] = this.count;
     this.add(x - q, y - q, q);
     this.add(x + q, y - q, q);
     this.add(x - q, y + q, q);
@@ -101,11 +110,26 @@ class QuadTree {
   }
 
   private add(x: number, y: number, half: number): void {
-    this.x.push(x);
-    this.y.push(y);
-    this.half.push(half);
-    this.child.push(0);
-    this.held.push(false);
+    if (this.count === this.x.length) this.grow();
+    this.x[this.count] = x;
+    this.y[this.count] = y;
+    this.half[this.count] = half;
+    this.count += 1;
+  }
+
+  private grow(): void {
+    const room = 2 * this.count;
+    const larger = (from: Float64Array) => {
+      const to = new Float64Array(room);
+      to.set(from);
+      return to;
+    };
+    [this.x, this.y, this.half] = [larger(this.x), larger(this.y), larger(this.half)];
+    const child = new Int32Array(room);
+    child.set(this.child);
+    const held = new Uint8Array(room);
+    held.set(this.held);
+    [this.child, this.held] = [child, held];
   }
 }
 
@@ -151,13 +175,6 @@ class RingRows {
     return Math.min(this.rows.length - 1, Math.max(0, row));
   }
 }
-
-const BESIDE = [
-  [-1, 0],
-  [1, 0],
-  [0, -1],
-  [0, 1],
-] as const;
 
 /** A number between −1 and 1 that hangs on `n` alone and follows no pattern. */
 function scatter(n: number): number {

@@ -1,4 +1,5 @@
 import Flatbush from 'flatbush';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { orientation, segmentsMeet } from '#shared/compute/geometry/predicates.ts';
 
 /** What an edge of a strip is: a line held at its head, a boundary closed to flow, an open end, or a soil boundary. */
@@ -57,9 +58,9 @@ class PointStore {
     const cy = Math.floor(y / this.merge);
     for (let i = cx - 1; i <= cx + 1; i += 1) {
       for (let j = cy - 1; j <= cy + 1; j += 1) {
-        for (const n of this.cells.get(cellKey(i, j)) ?? []) {
-          if (Math.hypot(this.x[n]! - x, this.y[n]! - y) < this.merge) return n;
-        }
+        const held = this.cells.get(cellKey(i, j));
+        if (held === undefined) continue;
+        for (const n of held) if (lengthOfVector(this.x[n]! - x, this.y[n]! - y) < this.merge) return n;
       }
     }
     const n = this.x.push(x) - 1;

@@ -1,8 +1,9 @@
 import type { Chain, Sizes } from '#shared/compute/field/strip-sizes.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { distanceToRing, type Ring, ringContains, ringOf } from '#shared/compute/geometry/polygon.ts';
 import {
   boxesMeet,
-  nearestOnPolyline,
+  distanceToPolyline,
   type Polyline,
   verticesOf,
 } from '#shared/compute/geometry/polyline.ts';
@@ -60,8 +61,7 @@ function waysChains(
   freeFaces: readonly Polyline[],
   slack: number,
 ): Chain[] {
-  const onFreeFace = ([x, y]: Pair) =>
-    freeFaces.some((face) => nearestOnPolyline(face, x, y).distance <= slack);
+  const onFreeFace = ([x, y]: Pair) => freeFaces.some((face) => distanceToPolyline(face, x, y) <= slack);
   const free = open || freeFaces.length === 0 ? points.map(() => false) : points.map(onFreeFace);
   const chains: Array<{ points: Pair[]; kind: Chain['kind'] }> = [];
   for (let i = 0; i + 1 < points.length; i += 1) {
@@ -145,7 +145,7 @@ function addBetween(
   sizeB: number,
   sizeAt: Sizes['sizeAt'],
 ): void {
-  const length = Math.hypot(b[0] - a[0], b[1] - a[1]);
+  const length = lengthOfVector(b[0] - a[0], b[1] - a[1]);
   if (length <= 1.5 * Math.min(sizeA, sizeB)) return;
   const middle: Pair = [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2];
   const size = sizeAt(...middle);

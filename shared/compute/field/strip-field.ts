@@ -56,10 +56,12 @@ export function solveStrip(
   const x =
     (system.rows.n < MANY_UNKNOWNS ? iterate(system, meanOf(held)) : null) ?? solveDirectly(mesh, system);
   if (x === null) return null;
-  const atCorners = Float64Array.from(mesh.unknowns, (unknown) => {
+  const atCorners = new Float64Array(mesh.unknowns.length);
+  for (let corner = 0; corner < atCorners.length; corner += 1) {
+    const unknown = mesh.unknowns[corner]!;
     const row = system.rowOf[unknown]!;
-    return row >= 0 ? x[row]! : held[unknown]!;
-  });
+    atCorners[corner] = row >= 0 ? x[row]! : held[unknown]!;
+  }
   return { unknowns: system.rows.n, at: placesOf(mesh, atCorners) };
 }
 

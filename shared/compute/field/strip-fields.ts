@@ -1,6 +1,6 @@
 import type { FieldMemory } from '#shared/compute/field/field-memory.ts';
 import { type StripField, solveStrip } from '#shared/compute/field/strip-field.ts';
-import { nearestOnPolyline } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline } from '#shared/compute/geometry/polyline.ts';
 import type { HeadOfLine } from '#shared/compute/net/net-heads.ts';
 import { elevationAt } from '#shared/compute/net/potentials.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
@@ -36,7 +36,7 @@ function solveOn(strip: Strip, ground: FieldGround): StripField | null {
   const headOn = (line: HeadOfLine) => (x: number, y: number) => line.head ?? elevation(x, y);
   // A boundary with a head of its own that the flow passes is held as a free face is, only at another head.
   const beside = (x: number, y: number) =>
-    strip.held.find(({ shape }) => nearestOnPolyline(shape, x, y).distance <= ground.slack);
+    strip.held.find(({ shape }) => distanceToPolyline(shape, x, y) <= ground.slack);
   const headBeside = (x: number, y: number) =>
     ground.heads.byId.get(beside(x, y)?.id ?? '')?.head ?? elevation(x, y);
   const around = { ...ground, freeFaces: [...ground.freeFaces, ...strip.held.map(({ shape }) => shape)] };

@@ -3,6 +3,7 @@ import { gradedPoints } from '#shared/compute/field/graded-points.ts';
 import { type EdgeKind, type NodedEdges, nodeEdges } from '#shared/compute/field/node-edges.ts';
 import { chainsOf, outlineOf, piecesInside } from '#shared/compute/field/strip-chains.ts';
 import { sizesOf } from '#shared/compute/field/strip-sizes.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { type Ring, ringContains } from '#shared/compute/geometry/polygon.ts';
 import type { Polyline } from '#shared/compute/geometry/polyline.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
@@ -61,7 +62,7 @@ export function meshStrip(strip: Strip, around: StripSurroundings): StripMesh | 
 function spacingsOf({ xy, edges }: NodedEdges): Float64Array {
   const spacing = new Float64Array(xy.length / 2);
   for (const { from, to } of edges) {
-    const length = Math.hypot(xy[2 * to]! - xy[2 * from]!, xy[2 * to + 1]! - xy[2 * from + 1]!);
+    const length = lengthOfVector(xy[2 * to]! - xy[2 * from]!, xy[2 * to + 1]! - xy[2 * from + 1]!);
     spacing[from] = Math.max(spacing[from]!, length);
     spacing[to] = Math.max(spacing[to]!, length);
   }
@@ -81,8 +82,8 @@ function numbered(mesh: Triangulation, ring: Ring, noded: NodedEdges): StripMesh
     corners.join(nextOf(e), other);
   }
   const names = new Int32Array(triangles.length).fill(-1);
-  const points: number[] = [];
-  const unknowns: number[] = [];
+  const points = new Uint32Array(triangles.length);
+  const unknowns = new Uint32Array(triangles.length);
   const kinds: Array<EdgeKind | null> = [];
   let count = 0;
   for (let e = 0; e < triangles.length; e += 1) {
@@ -92,14 +93,14 @@ function numbered(mesh: Triangulation, ring: Ring, noded: NodedEdges): StripMesh
       names[root] = count;
       count += 1;
     }
-    points.push(triangles[e]!);
-    unknowns.push(names[root]!);
+    points[kinds.length] = triangles[e]!;
+    unknowns[kinds.length] = names[root]!;
     kinds.push(kindOf[e] ?? null);
   }
   return {
     xy,
-    triangles: Uint32Array.from(points),
-    unknowns: Uint32Array.from(unknowns),
+    triangles: points.slice(0, kinds.length),
+    unknowns: unknowns.slice(0, kinds.length),
     unknownCount: count,
     kinds,
   };
@@ -133,20 +134,29 @@ function trianglesInside(
     const other = halfedges[e]!;
     if (other > e && kindOf[e] === undefined) patches.join((e / 3) | 0, (other / 3) | 0);
   }
-  const largest = new Map<number, { t: number; area: number }>();
+  const largest = new Int32Array(count).fill(-1);
+  const areas = new Float64Array(count);
   for (let t = 0; t < count; t += 1) {
     const area = areaOf(xy, triangles, t);
     const root = patches.rootOf(t);
-    if (area > (largest.get(root)?.area ?? -1)) largest.set(root, { t, area });
+    if (largest[root]! >= 0 && area <= areas[root]!) continue;
+    largest[root] = t;
+    areas[root] = area;
   }
   const isInside = new Uint8Array(count);
-  for (const [root, { t }] of largest)
-    isInside[root] = ringContains(ring, ...middleOf(xy, triangles, t)) ? 1 : 0;
-  return Uint8Array.from({ length: count }, (_, t) => isInside[patches.rootOf(t)]!);
+  for (let root = 0; root < count; root += 1) {
+    const t = largest[root]!;
+    if (t >= 0 && ringContains(ring, ...middleOf(xy, triangles, t))) isInside[root] = 1;
+  }
+  const inside = new Uint8Array(count);
+  for (let t = 0; t < count; t += 1) inside[t] = isInside[patches.rootOf(t)]!;
+  return inside;
 }
 
 function areaOf(xy: Float64Array, triangles: Uint32Array, t: number): number {
-  const [a, b, c] = [2 * triangles[3 * t]!, 2 * triangles[3 * t + 1]!, 2 * triangles[3 * t + 2]!];
+  const a = 2 * triangles[3 * t]!;
+  const b = 2 * triangles[3 * t + 1]!;
+  const c = 2 * triangles[3 * t + 2]!;
   const cross = (xy[b]! - xy[a]!) * (xy[c + 1]! - xy[a + 1]!) - (xy[b + 1]! - xy[a + 1]!) * (xy[c]! - xy[a]!);
   return Math.abs(cross) / 2;
 }

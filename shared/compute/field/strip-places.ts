@@ -1,4 +1,5 @@
 import type { StripMesh } from '#shared/compute/field/strip-mesh.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 
 /** Head at a place of a strip, and its gradient by working pixels. */
 export type FieldPlace = { readonly head: number; readonly gradient: readonly [number, number] };
@@ -48,10 +49,16 @@ function nearestTriangle(
   let nearest = slack;
   let best: Nearest | null = null;
   for (let t = 0; t < triangles.length; t += 3) {
-    const [i, j, k] = [2 * triangles[t]!, 2 * triangles[t + 1]!, 2 * triangles[t + 2]!];
-    const [ax, bx, cx] = [xy[i]!, xy[j]!, xy[k]!];
+    const i = 2 * triangles[t]!;
+    const j = 2 * triangles[t + 1]!;
+    const k = 2 * triangles[t + 2]!;
+    const ax = xy[i]!;
+    const bx = xy[j]!;
+    const cx = xy[k]!;
     if (x < Math.min(ax, bx, cx) - nearest || x > Math.max(ax, bx, cx) + nearest) continue;
-    const [ay, by, cy] = [xy[i + 1]!, xy[j + 1]!, xy[k + 1]!];
+    const ay = xy[i + 1]!;
+    const by = xy[j + 1]!;
+    const cy = xy[k + 1]!;
     if (y < Math.min(ay, by, cy) - nearest || y > Math.max(ay, by, cy) + nearest) continue;
     if (Number.isNaN(heads[t]! + heads[t + 1]! + heads[t + 2]!)) continue;
     const whole = (bx - ax) * (cy - ay) - (by - ay) * (cx - ax);
@@ -84,7 +91,7 @@ function toSide(
   const [dx, dy] = [corners[b]! - ax, corners[b + 1]! - ay];
   const square = dx * dx + dy * dy;
   const along = square > 0 ? Math.min(1, Math.max(0, ((x - ax) * dx + (y - ay) * dy) / square)) : 0;
-  return { distance: Math.hypot(ax + along * dx - x, ay + along * dy - y), along };
+  return { distance: lengthOfVector(ax + along * dx - x, ay + along * dy - y), along };
 }
 
 /** Gradient of the head at each unknown: the mean of the triangles about it, by area. */
@@ -92,10 +99,15 @@ function slopesOf({ xy, triangles, unknowns, unknownCount }: StripMesh, heads: F
   const slopes = new Float64Array(2 * unknownCount);
   const weight = new Float64Array(unknownCount);
   for (let t = 0; t < triangles.length; t += 3) {
-    const [i, j, k] = [2 * triangles[t]!, 2 * triangles[t + 1]!, 2 * triangles[t + 2]!];
-    const [ux, uy] = [xy[j]! - xy[i]!, xy[j + 1]! - xy[i + 1]!];
-    const [vx, vy] = [xy[k]! - xy[i]!, xy[k + 1]! - xy[i + 1]!];
-    const [du, dv] = [heads[t + 1]! - heads[t]!, heads[t + 2]! - heads[t]!];
+    const i = 2 * triangles[t]!;
+    const j = 2 * triangles[t + 1]!;
+    const k = 2 * triangles[t + 2]!;
+    const ux = xy[j]! - xy[i]!;
+    const uy = xy[j + 1]! - xy[i + 1]!;
+    const vx = xy[k]! - xy[i]!;
+    const vy = xy[k + 1]! - xy[i + 1]!;
+    const du = heads[t + 1]! - heads[t]!;
+    const dv = heads[t + 2]! - heads[t]!;
     const twice = ux * vy - uy * vx;
     if (twice === 0 || Number.isNaN(du + dv)) continue;
     const sign = Math.sign(twice);

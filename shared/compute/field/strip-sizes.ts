@@ -1,8 +1,9 @@
 import type { EdgeKind } from '#shared/compute/field/node-edges.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import {
+  distanceToPolyline,
   firstOf,
   lastOf,
-  nearestOnPolyline,
   polylineOf,
   verticesOf,
 } from '#shared/compute/geometry/polyline.ts';
@@ -44,11 +45,11 @@ export function sizesOf(strip: Strip, inner: readonly Pair[][], slack: number): 
   const before = polylineOf(thinned(verticesOf(strip.beforeShape), slack)) ?? strip.beforeShape;
   const after = polylineOf(thinned(verticesOf(strip.afterShape), slack)) ?? strip.afterShape;
   const widthAt = (x: number, y: number) =>
-    nearestOnPolyline(before, x, y).distance + nearestOnPolyline(after, x, y).distance;
+    distanceToPolyline(before, x, y) + distanceToPolyline(after, x, y);
   const least = LEAST_SIZE_PX * Math.max(1, steep.length / MANY_STEEP);
   const sizeAt = (x: number, y: number) => {
     let toCorner = Number.POSITIVE_INFINITY;
-    for (const corner of steep) toCorner = Math.min(toCorner, Math.hypot(corner[0] - x, corner[1] - y));
+    for (const corner of steep) toCorner = Math.min(toCorner, lengthOfVector(corner[0] - x, corner[1] - y));
     return Math.max(least, Math.min(widthAt(x, y) / ACROSS, 0.5 * least + GROWTH * toCorner));
   };
   return { widthAt, sizeAt };
@@ -85,7 +86,7 @@ function steepCorners(strip: Strip, slack: number): Pair[] {
 }
 
 function apart(a: Pair, b: Pair): number {
-  return Math.hypot(a[0] - b[0], a[1] - b[1]);
+  return lengthOfVector(a[0] - b[0], a[1] - b[1]);
 }
 
 function areaOf(points: readonly Pair[]): number {

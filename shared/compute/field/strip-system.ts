@@ -26,7 +26,9 @@ export function stiffnessOf(
   const { xy, triangles } = mesh;
   const stiffness = new Float64Array(2 * triangles.length);
   for (let t = 0; t < triangles.length; t += 3) {
-    const [i, j, k] = [2 * triangles[t]!, 2 * triangles[t + 1]!, 2 * triangles[t + 2]!];
+    const i = 2 * triangles[t]!;
+    const j = 2 * triangles[t + 1]!;
+    const k = 2 * triangles[t + 2]!;
     const b0 = xy[j + 1]! - xy[k + 1]!;
     const b1 = xy[k + 1]! - xy[i + 1]!;
     const b2 = xy[i + 1]! - xy[j + 1]!;
@@ -39,7 +41,9 @@ export function stiffnessOf(
         ? ISOTROPIC
         : tensorAt((xy[i]! + xy[j]! + xy[k]!) / 3, (xy[i + 1]! + xy[j + 1]! + xy[k + 1]!) / 3);
     const part = area > LEAST_AREA ? 1 / (4 * area) : Number.NaN;
-    const [xx, xz, yy] = [tensor.xx * part, tensor.xy * part, tensor.yy * part];
+    const xx = tensor.xx * part;
+    const xz = tensor.xy * part;
+    const yy = tensor.yy * part;
     const at = 2 * t;
     stiffness[at] = b0 * b0 * xx + 2 * b0 * c0 * xz + c0 * c0 * yy;
     stiffness[at + 1] = b0 * b1 * xx + (b0 * c1 + b1 * c0) * xz + c0 * c1 * yy;
@@ -61,9 +65,9 @@ const PLACE = [0, 1, 2, 1, 3, 4, 2, 4, 5];
  * joins to a held one are left out: they have no head.
  */
 export function systemOf(mesh: StripMesh, stiffness: Float64Array, held: Float64Array): StripSystem {
-  const rowOf = rowsOf(mesh, stiffness, held);
-  const n = rowOf.reduce((most, row) => Math.max(most, row), -1) + 1;
-  const { starts, columns } = patternOf(mesh, stiffness, rowOf, n);
+  const sheaves = trianglesAt(mesh, stiffness);
+  const { rowOf, n } = rowsOf(mesh, sheaves, held);
+  const { starts, columns } = patternOf(mesh, sheaves, rowOf, n);
   const values = new Float64Array(columns.length);
   const diagonal = new Float64Array(n);
   const right = new Float64Array(n);
@@ -92,16 +96,21 @@ export function systemOf(mesh: StripMesh, stiffness: Float64Array, held: Float64
 /** Numbers the unknowns that triangles with an area join to a held one, from the held ones inwards. */
 function rowsOf(
   { unknowns, unknownCount }: StripMesh,
-  stiffness: Float64Array,
+  sheaves: Sheaves,
   held: Float64Array,
-): Int32Array {
-  const sheaves = trianglesAt(unknowns, unknownCount, (t) => !Number.isNaN(stiffness[2 * t]!));
+): { rowOf: Int32Array; n: number } {
   const rowOf = new Int32Array(unknownCount).fill(-1);
-  const seen = Uint8Array.from(held, (head) => (Number.isNaN(head) ? 0 : 1));
-  const queue: number[] = [];
-  for (let u = 0; u < unknownCount; u += 1) if (seen[u] === 1) queue.push(u);
+  const seen = new Uint8Array(unknownCount);
+  const queue = new Int32Array(unknownCount);
+  let queued = 0;
+  for (let u = 0; u < unknownCount; u += 1) {
+    if (Number.isNaN(held[u]!)) continue;
+    seen[u] = 1;
+    queue[queued] = u;
+    queued += 1;
+  }
   let row = 0;
-  for (let q = 0; q < queue.length; q += 1) {
+  for (let q = 0; q < queued; q += 1) {
     const u = queue[q]!;
     for (let k = sheaves.starts[u]!; k < sheaves.starts[u + 1]!; k += 1) {
       const t = sheaves.items[k]!;
@@ -111,29 +120,28 @@ function rowsOf(
         seen[other] = 1;
         rowOf[other] = row;
         row += 1;
-        queue.push(other);
+        queue[queued] = other;
+        queued += 1;
       }
     }
   }
-  return rowOf;
+  return { rowOf, n: row };
 }
 
-/** For each unknown the triangles at it (first corner's number), packed. */
-function trianglesAt(
-  unknowns: Uint32Array,
-  count: number,
-  counts: (t: number) => boolean,
-): { starts: Int32Array; items: Int32Array } {
+/** For each unknown the triangles with an area at it (first corner's number), packed. */
+type Sheaves = { readonly starts: Int32Array; readonly items: Int32Array };
+
+function trianglesAt({ unknowns, unknownCount: count }: StripMesh, stiffness: Float64Array): Sheaves {
   const starts = new Int32Array(count + 1);
   for (let t = 0; t < unknowns.length; t += 3) {
-    if (!counts(t)) continue;
+    if (Number.isNaN(stiffness[2 * t]!)) continue;
     for (let i = 0; i < 3; i += 1) starts[unknowns[t + i]! + 1] = starts[unknowns[t + i]! + 1]! + 1;
   }
   for (let u = 0; u < count; u += 1) starts[u + 1] = starts[u + 1]! + starts[u]!;
   const next = starts.slice(0, count);
   const items = new Int32Array(starts[count]!);
   for (let t = 0; t < unknowns.length; t += 3) {
-    if (!counts(t)) continue;
+    if (Number.isNaN(stiffness[2 * t]!)) continue;
     for (let i = 0; i < 3; i += 1) {
       const u = unknowns[t + i]!;
       items[next[u]!] = t;
@@ -145,12 +153,11 @@ function trianglesAt(
 
 /** Which columns each row has, the diagonal apart. */
 function patternOf(
-  { unknowns, unknownCount }: StripMesh,
-  stiffness: Float64Array,
+  { unknowns }: StripMesh,
+  sheaves: Sheaves,
   rowOf: Int32Array,
   n: number,
 ): { starts: Int32Array; columns: Int32Array } {
-  const sheaves = trianglesAt(unknowns, unknownCount, (t) => !Number.isNaN(stiffness[2 * t]!));
   const unknownOf = new Int32Array(n);
   rowOf.forEach((row, u) => {
     if (row >= 0) unknownOf[row] = u;

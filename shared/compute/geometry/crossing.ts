@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { type Box, boxesMeet, type Polyline, RUN } from '#shared/compute/geometry/polyline.ts';
 import { type Pair, segmentsMeet } from '#shared/compute/geometry/predicates.ts';
 
@@ -99,7 +100,7 @@ function parametersOf(
   const qy = dy - cy;
   const cross = rx * qy - ry * qx;
   // Segments of one straight line, parallel but for rounding, have no crossing worth the name.
-  if (Math.abs(cross) > 1e-9 * Math.hypot(rx, ry) * Math.hypot(qx, qy)) {
+  if (Math.abs(cross) > 1e-9 * lengthOfVector(rx, ry) * lengthOfVector(qx, qy)) {
     const t = ((cx - ax) * qy - (cy - ay) * qx) / cross;
     const u = ((cx - ax) * ry - (cy - ay) * rx) / cross;
     if (Number.isFinite(t) && Number.isFinite(u)) return [held(t), held(u)];

@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { type Box, boxesMeet } from '#shared/compute/geometry/polyline.ts';
 import { orientation, type Pair } from '#shared/compute/geometry/predicates.ts';
 
@@ -86,7 +87,7 @@ export function distanceToRing(ring: Ring, x: number, y: number): number {
     const dy = xy[2 * i + 1]! - ay;
     const square = dx * dx + dy * dy;
     const t = square > 0 ? Math.min(1, Math.max(0, ((x - ax) * dx + (y - ay) * dy) / square)) : 0;
-    best = Math.min(best, Math.hypot(ax + t * dx - x, ay + t * dy - y));
+    best = Math.min(best, lengthOfVector(ax + t * dx - x, ay + t * dy - y));
   }
   return best;
 }

@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
 export type Box = {
@@ -36,7 +37,9 @@ export type PolylinePlace = {
  */
 export function polylineOf(points: readonly Pair[]): Polyline | null {
   const kept: number[] = [];
-  for (const [x, y] of points) {
+  for (const point of points) {
+    const x = point[0];
+    const y = point[1];
     if (!Number.isFinite(x) || !Number.isFinite(y)) return null;
     const n = kept.length;
     if (n > 0 && kept[n - 2] === x && kept[n - 1] === y) continue;
@@ -60,7 +63,7 @@ export function polylineFromFlat(xy: Float64Array): Polyline {
     minY = Math.min(minY, y);
     maxX = Math.max(maxX, x);
     maxY = Math.max(maxY, y);
-    if (i > 0) cum[i] = cum[i - 1]! + Math.hypot(x - xy[2 * i - 2]!, y - xy[2 * i - 1]!);
+    if (i > 0) cum[i] = cum[i - 1]! + lengthOfVector(x - xy[2 * i - 2]!, y - xy[2 * i - 1]!);
   }
   return { xy, cum, box: { minX, minY, maxX, maxY }, runs: runBoxes(xy) };
 }
@@ -129,38 +132,61 @@ export function segmentAlong(line: Polyline, s: number): number {
 /** Nearest place on a polyline to a point, same frame. Of several equally near places the first along the line. */
 export function nearestOnPolyline(line: Polyline, x: number, y: number): PolylinePlace {
   const { xy, cum } = line;
+  const segment = nearestSegment(line, x, y);
+  const part = partAlong(xy, segment, x, y);
+  const ax = xy[2 * segment]!;
+  const ay = xy[2 * segment + 1]!;
+  const px = ax + part * (xy[2 * segment + 2]! - ax);
+  const py = ay + part * (xy[2 * segment + 3]! - ay);
+  const from = cum[segment]!;
+  return {
+    s: from + part * (cum[segment + 1]! - from),
+    at: [px, py],
+    distance: lengthOfVector(px - x, py - y),
+    segment,
+  };
+}
+
+/** Distance from a point to a polyline, same frame and unit. */
+export function distanceToPolyline(line: Polyline, x: number, y: number): number {
+  return Math.sqrt(squareToSegment(line.xy, nearestSegment(line, x, y), x, y));
+}
+
+/** The segment nearest to a point, the first of several. */
+function nearestSegment(line: Polyline, x: number, y: number): number {
+  const last = line.cum.length - 1;
   let best = Number.POSITIVE_INFINITY;
-  let bestSegment = 0;
-  let bestT = 0;
-  for (let i = 0; i + 1 < cum.length; i += 1) {
+  let nearest = 0;
+  for (let i = 0; i < last; i += 1) {
     if (i % RUN === 0 && squareToRun(line, i / RUN, x, y) >= best) {
       i += RUN - 1;
       continue;
     }
-    const ax = xy[2 * i]!;
-    const ay = xy[2 * i + 1]!;
-    const dx = xy[2 * i + 2]! - ax;
-    const dy = xy[2 * i + 3]! - ay;
-    const t = Math.min(1, Math.max(0, ((x - ax) * dx + (y - ay) * dy) / (dx * dx + dy * dy)));
-    const ex = ax + t * dx - x;
-    const ey = ay + t * dy - y;
-    const square = ex * ex + ey * ey;
+    const square = squareToSegment(line.xy, i, x, y);
     if (square < best) {
       best = square;
-      bestSegment = i;
-      bestT = t;
+      nearest = i;
     }
   }
-  const from = cum[bestSegment]!;
-  const s = from + bestT * (cum[bestSegment + 1]! - from);
-  const [ax, ay] = vertexOf(line, bestSegment);
-  const [bx, by] = vertexOf(line, bestSegment + 1);
-  return {
-    s,
-    at: [ax + bestT * (bx - ax), ay + bestT * (by - ay)],
-    distance: Math.sqrt(best),
-    segment: bestSegment,
-  };
+  return nearest;
+}
+
+/** Where along segment `i` the place nearest to a point lies: 0 at its start, 1 at its end. */
+function partAlong(xy: Float64Array, i: number, x: number, y: number): number {
+  const ax = xy[2 * i]!;
+  const ay = xy[2 * i + 1]!;
+  const dx = xy[2 * i + 2]! - ax;
+  const dy = xy[2 * i + 3]! - ay;
+  return Math.min(1, Math.max(0, ((x - ax) * dx + (y - ay) * dy) / (dx * dx + dy * dy)));
+}
+
+function squareToSegment(xy: Float64Array, i: number, x: number, y: number): number {
+  const part = partAlong(xy, i, x, y);
+  const ax = xy[2 * i]!;
+  const ay = xy[2 * i + 1]!;
+  const ex = ax + part * (xy[2 * i + 2]! - ax) - x;
+  const ey = ay + part * (xy[2 * i + 3]! - ay) - y;
+  return ex * ex + ey * ey;
 }
 
 /** Squared distance from a point to the box of a run; 0 inside it. */
@@ -187,7 +213,9 @@ export function pieceOf(line: Polyline, s0: number, s1: number): Pair[] {
 
 /** All vertices of a polyline as pairs. */
 export function verticesOf(line: Polyline): Pair[] {
-  return Array.from(line.cum, (_, i) => vertexOf(line, i));
+  const vertices: Pair[] = [];
+  for (let i = 0; i < line.cum.length; i += 1) vertices.push(vertexOf(line, i));
+  return vertices;
 }
 
 /** True when two boxes, the first grown by `margin`, have a point in common. */

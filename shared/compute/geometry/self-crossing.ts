@@ -19,18 +19,21 @@ export function selfCrossingOf(
   const segments = line.cum.length - 1;
   const moments = momentsOf(line);
   let narrow = 0;
-  for (const [i, j] of meetingRuns(line, segments)) {
+  return firstOfMeeting(line, (i, j) => {
     const crossing = crossingOf(line, i, j);
-    if (crossing === null || !isWanted(crossing)) continue;
+    if (crossing === null || !isWanted(crossing)) return null;
     if (meanWidth(line, moments, crossing, i, j) > slack) return crossing;
     narrow += 1;
-    if (narrow > segments) return crossing;
-  }
-  return null;
+    return narrow > segments ? crossing : null;
+  });
 }
 
-/** Pairs of segments, the first before the second and not its neighbour, of runs whose boxes meet. */
-function* meetingRuns({ runs }: Polyline, segments: number): Generator<readonly [number, number]> {
+/** What `crossingAt` finds first among pairs of segments, the first before the second and not its neighbour, whose boxes meet. */
+function firstOfMeeting(
+  { runs, xy, cum }: Polyline,
+  crossingAt: (i: number, j: number) => SelfCrossing | null,
+): SelfCrossing | null {
+  const segments = cum.length - 1;
   const count = runs.length / 4;
   for (let p = 0; p < count; p += 1) {
     for (let q = p; q < count; q += 1) {
@@ -39,10 +42,24 @@ function* meetingRuns({ runs }: Polyline, segments: number): Generator<readonly 
       const lastI = Math.min(segments, (p + 1) * RUN);
       const lastJ = Math.min(segments, (q + 1) * RUN);
       for (let i = p * RUN; i < lastI; i += 1) {
-        for (let j = Math.max(i + 2, q * RUN); j < lastJ; j += 1) yield [i, j];
+        for (let j = Math.max(i + 2, q * RUN); j < lastJ; j += 1) {
+          const found = segmentsNear(xy, 2 * i, 2 * j) ? crossingAt(i, j) : null;
+          if (found !== null) return found;
+        }
       }
     }
   }
+  return null;
+}
+
+/** True when the boxes of the segments that begin at two places of `xy` have a point in common. */
+function segmentsNear(xy: Float64Array, i: number, j: number): boolean {
+  return (
+    Math.max(xy[j]!, xy[j + 2]!) >= Math.min(xy[i]!, xy[i + 2]!) &&
+    Math.min(xy[j]!, xy[j + 2]!) <= Math.max(xy[i]!, xy[i + 2]!) &&
+    Math.max(xy[j + 1]!, xy[j + 3]!) >= Math.min(xy[i + 1]!, xy[i + 3]!) &&
+    Math.min(xy[j + 1]!, xy[j + 3]!) <= Math.max(xy[i + 1]!, xy[i + 3]!)
+  );
 }
 
 /** Where the line crosses itself between two of its segments, or at the end of one of them; null when it does not. */
@@ -50,8 +67,6 @@ function crossingOf(line: Polyline, i: number, j: number): SelfCrossing | null {
   const { xy, cum } = line;
   const [ax, ay, bx, by] = [xy[2 * i]!, xy[2 * i + 1]!, xy[2 * i + 2]!, xy[2 * i + 3]!];
   const [cx, cy, dx, dy] = [xy[2 * j]!, xy[2 * j + 1]!, xy[2 * j + 2]!, xy[2 * j + 3]!];
-  if (Math.max(cx, dx) < Math.min(ax, bx) || Math.min(cx, dx) > Math.max(ax, bx)) return null;
-  if (Math.max(cy, dy) < Math.min(ay, by) || Math.min(cy, dy) > Math.max(ay, by)) return null;
   const ends = sideOf(line, i, j) * sideOf(line, i, j + 1);
   const others = sideOf(line, j, i) * sideOf(line, j, i + 1);
   if (ends > 0 || others > 0) return null;

@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
 /**
@@ -33,5 +34,5 @@ export function distanceToSegment(point: Pair, a: Pair, b: Pair): number {
   const square = dx * dx + dy * dy;
   const t =
     square > 0 ? Math.min(1, Math.max(0, ((point[0] - a[0]) * dx + (point[1] - a[1]) * dy) / square)) : 0;
-  return Math.hypot(a[0] + t * dx - point[0], a[1] + t * dy - point[1]);
+  return lengthOfVector(a[0] + t * dx - point[0], a[1] + t * dy - point[1]);
 }

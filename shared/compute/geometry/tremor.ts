@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
 /** Vertices on either side of one that a local curve is fitted to, tried from the narrowest to the widest. */
@@ -36,15 +37,17 @@ export function tremorOf(points: readonly Pair[]): number {
 export function withoutTremor(points: readonly Pair[], accuracy: number): readonly Pair[] {
   const tremor = Math.min(tremorOf(points), MOST_TREMOR * accuracy);
   if (!(tremor > NO_TREMOR * accuracy)) return points;
-  const along = distancesAlong(points);
-  return points.map((_, i) => placeWithoutTremor(points, along, i, tremor));
+  const fit = new ParabolaFit(points, distancesAlong(points));
+  const fits = new Float64Array(3 * (WINDOWS.length + 1));
+  return points.map((_, i) => placeWithoutTremor(points, fit, i, tremor, fits));
 }
 
 function distancesAlong(points: readonly Pair[]): Float64Array {
   const along = new Float64Array(points.length);
   for (let i = 1; i < along.length; i += 1) {
-    const [a, b] = [points[i - 1]!, points[i]!];
-    along[i] = along[i - 1]! + Math.hypot(b[0] - a[0], b[1] - a[1]);
+    const a = points[i - 1]!;
+    const b = points[i]!;
+    along[i] = along[i - 1]! + lengthOfVector(b[0] - a[0], b[1] - a[1]);
   }
   return along;
 }
@@ -64,56 +67,63 @@ function strayAt(points: readonly Pair[], along: Float64Array, i: number): numbe
     dy -= weight * points[j]![1];
     square += weight * weight;
   }
-  return Number.isFinite(square) ? Math.hypot(dx, dy) / Math.sqrt(square) : 0;
+  return Number.isFinite(square) ? lengthOfVector(dx, dy) / Math.sqrt(square) : 0;
 }
 
-function placeWithoutTremor(points: readonly Pair[], along: Float64Array, i: number, tremor: number): Pair {
-  const fit = new ParabolaFit(points, along, i);
-  // Places and standard deviations, for a tremor of 1, of the fits that agree so far, flat: x y spread.
-  const fits = [points[i]![0], points[i]![1], 1];
-  for (const window of WINDOWS) {
-    if (window > i && window > points.length - 1 - i && fits.length > (3 * WINDOWS.length) / 2) break;
+/** `fits`: places and standard deviations, for a tremor of 1, of the fits that agree so far, flat: x y spread. */
+function placeWithoutTremor(
+  points: readonly Pair[],
+  fit: ParabolaFit,
+  i: number,
+  tremor: number,
+  fits: Float64Array,
+): Pair {
+  fit.about(i);
+  fits[0] = points[i]![0];
+  fits[1] = points[i]![1];
+  fits[2] = 1;
+  let used = 3;
+  for (let w = 0; w < WINDOWS.length; w += 1) {
+    const window = WINDOWS[w]!;
+    if (window > i && window > points.length - 1 - i && used > (3 * WINDOWS.length) / 2) break;
     if (!fit.over(window)) continue;
-    if (!agrees(fit, fits, AGREE * tremor)) break;
-    fits.push(fit.x, fit.y, fit.spread);
+    if (!agrees(fit.found, fits, used, AGREE * tremor)) break;
+    fits.set(fit.found, used);
+    used += 3;
   }
-  return [fits[fits.length - 3]!, fits[fits.length - 2]!];
+  return [fits[used - 3]!, fits[used - 2]!];
 }
 
-function agrees(fit: ParabolaFit, others: readonly number[], allowed: number): boolean {
-  for (let k = 0; k < others.length; k += 3) {
-    const apart = Math.hypot(fit.x - others[k]!, fit.y - others[k + 1]!);
-    if (!(apart <= allowed * (fit.spread + others[k + 2]!))) return false;
+function agrees(found: Float64Array, others: Float64Array, used: number, allowed: number): boolean {
+  for (let k = 0; k < used; k += 3) {
+    const apart = lengthOfVector(found[0]! - others[k]!, found[1]! - others[k + 1]!);
+    if (!(apart <= allowed * (found[2]! + others[k + 2]!))) return false;
   }
   return true;
 }
 
 /**
- * The least-squares parabola about a vertex, its sums taken further as the window grows. Numbers in fields of their own:
- * it is worked out for every vertex of a net at each reading.
+ * The least-squares parabola about a vertex, its sums taken further as the window grows. The sums lie in one array, and
+ * one fit serves all vertices: it is worked out for every vertex of a net at each reading, and a number that changes in
+ * an object's field costs a new one on the heap each time.
  */
 class ParabolaFit {
-  x = 0;
-  y = 0;
-  spread = 1;
-  private s0 = 0;
-  private s1 = 0;
-  private s2 = 0;
-  private s3 = 0;
-  private s4 = 0;
-  private x0 = 0;
-  private x1 = 0;
-  private x2 = 0;
-  private y0 = 0;
-  private y1 = 0;
-  private y2 = 0;
+  /** Place of the vertex by the fit, and its standard deviation for a tremor of 1: x y spread. */
+  readonly found = new Float64Array(3);
+  /** Sums of t⁰ to t⁴, of x·t⁰ to x·t², and of y·t⁰ to y·t², all from the vertex. */
+  private readonly sums = new Float64Array(11);
+  private middle = 0;
   private reached = 0;
 
   constructor(
     private readonly points: readonly Pair[],
     private readonly along: Float64Array,
-    private readonly middle: number,
-  ) {
+  ) {}
+
+  about(middle: number): void {
+    this.middle = middle;
+    this.reached = 0;
+    this.sums.fill(0);
     this.take(middle);
   }
 
@@ -124,8 +134,13 @@ class ParabolaFit {
       this.take(this.middle - this.reached);
       this.take(this.middle + this.reached);
     }
-    const { s0, s1, s2, s3, s4 } = this;
+    const { sums } = this;
+    const s0 = sums[0]!;
     if (s0 < 5) return false;
+    const s1 = sums[1]!;
+    const s2 = sums[2]!;
+    const s3 = sums[3]!;
+    const s4 = sums[4]!;
     // First row of the inverse of the normal equations: the value at the vertex itself.
     const a = s2 * s4 - s3 * s3;
     const b = s2 * s3 - s1 * s4;
@@ -133,30 +148,31 @@ class ParabolaFit {
     const determinant = s0 * a + s1 * b + s2 * c;
     if (!(determinant > 0)) return false;
     const at = this.points[this.middle]!;
-    this.x = at[0] + (a * this.x0 + b * this.x1 + c * this.x2) / determinant;
-    this.y = at[1] + (a * this.y0 + b * this.y1 + c * this.y2) / determinant;
-    this.spread = Math.sqrt(a / determinant);
+    this.found[0] = at[0] + (a * sums[5]! + b * sums[6]! + c * sums[7]!) / determinant;
+    this.found[1] = at[1] + (a * sums[8]! + b * sums[9]! + c * sums[10]!) / determinant;
+    this.found[2] = Math.sqrt(a / determinant);
     return true;
   }
 
   private take(i: number): void {
     if (i < 0 || i >= this.points.length) return;
+    const { sums } = this;
     const point = this.points[i]!;
     const at = this.points[this.middle]!;
     const t = this.along[i]! - this.along[this.middle]!;
     const dx = point[0] - at[0];
     const dy = point[1] - at[1];
     const tt = t * t;
-    this.s0 += 1;
-    this.s1 += t;
-    this.s2 += tt;
-    this.s3 += tt * t;
-    this.s4 += tt * tt;
-    this.x0 += dx;
-    this.x1 += t * dx;
-    this.x2 += tt * dx;
-    this.y0 += dy;
-    this.y1 += t * dy;
-    this.y2 += tt * dy;
+    sums[0] = sums[0]! + 1;
+    sums[1] = sums[1]! + t;
+    sums[2] = sums[2]! + tt;
+    sums[3] = sums[3]! + tt * t;
+    sums[4] = sums[4]! + tt * tt;
+    sums[5] = sums[5]! + dx;
+    sums[6] = sums[6]! + t * dx;
+    sums[7] = sums[7]! + tt * dx;
+    sums[8] = sums[8]! + dy;
+    sums[9] = sums[9]! + t * dy;
+    sums[10] = sums[10]! + tt * dy;
   }
 }

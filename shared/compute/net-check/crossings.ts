@@ -1,6 +1,7 @@
 import type { NetCell, NetCells } from '#shared/compute/cells/cells.ts';
 import { angleBetween } from '#shared/compute/cells/quadrilateral.ts';
 import type { Rail } from '#shared/compute/cells/rails.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { lengthOf, nearestOnPolyline, type Polyline } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import type { NetModel } from '#shared/compute/net/net-model.ts';
@@ -53,7 +54,7 @@ export function meetingsOf(model: NetModel, net: NetCells, accuracyPx: number): 
     const length = mean(corner.cells.map((cell) => cell.measures.length));
     const width = mean(corner.cells.map((cell) => cell.measures.width));
     const near = Math.max(3 * accuracyPx, CORNER_PART * Math.min(length, width));
-    if (net.singular.some(([x, y]) => Math.hypot(x - corner.at[0], y - corner.at[1]) <= near)) return [];
+    if (net.singular.some(([x, y]) => lengthOfVector(x - corner.at[0], y - corner.at[1]) <= near)) return [];
     const line = footed.get(corner.head);
     const headShape = line?.shape ?? potential?.shape;
     const carrier = [line?.start, line?.end].find(
@@ -111,7 +112,7 @@ function angleAt(
   const degrees = 180 / Math.PI;
   return {
     angleDeg: Math.min(angle, 180 - angle),
-    tremorDeg: degrees * Math.hypot(onHead.tremor, onFlow.tremor),
+    tremorDeg: degrees * lengthOfVector(onHead.tremor, onFlow.tremor),
   };
 }
 
@@ -129,7 +130,7 @@ function fitAt(
 }
 
 function isAt(a: Pair, b: Pair, accuracyPx: number): boolean {
-  return Math.hypot(a[0] - b[0], a[1] - b[1]) <= Math.max(1e-6, accuracyPx);
+  return lengthOfVector(a[0] - b[0], a[1] - b[1]) <= Math.max(1e-6, accuracyPx);
 }
 
 function mean(values: readonly number[]): number {

@@ -1,4 +1,5 @@
 import { angleBetween } from '#shared/compute/cells/quadrilateral.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { type Polyline, pointAlong, segmentAlong } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
@@ -50,7 +51,7 @@ function tangentAtSparseEnd(
     Pair,
   ];
   const bend = angleBetween([b[0] - a[0], b[1] - a[1]], [c[0] - b[0], c[1] - b[1]]);
-  return { ...found, tremor: Math.hypot(found.tremor, (BEND_PART * bend * Math.PI) / 180) };
+  return { ...found, tremor: lengthOfVector(found.tremor, (BEND_PART * bend * Math.PI) / 180) };
 }
 
 /**
@@ -110,7 +111,7 @@ function fitted(samples: readonly Sample[], independent: number, accuracyPx: num
   const rows = inverseOf(sums);
   if (rows === null) return null;
   const [xs, ys] = [rows.map((row) => dot(row, x)), rows.map((row) => dot(row, y))];
-  const size = Math.hypot(xs[1]!, ys[1]!);
+  const size = lengthOfVector(xs[1]!, ys[1]!);
   if (!(size > 0)) return null;
   const square = samples.reduce((sum, { by, at }) => {
     const t = by / scale;
@@ -154,7 +155,7 @@ function chordAt(shape: Polyline, s: number, accuracyPx: number): Tangent {
   let last = first + 1;
   for (;;) {
     const across: Pair = [xy[2 * last]! - xy[2 * first]!, xy[2 * last + 1]! - xy[2 * first + 1]!];
-    const length = Math.hypot(...across);
+    const length = lengthOfVector(...across);
     if (length > 0) {
       const direction: Pair = [across[0] / length, across[1] / length];
       // A direction that the tracing leaves open altogether is off by no more than a quarter turn.

@@ -1,5 +1,5 @@
 import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
-import { nearestOnPolyline, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline, type Polyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 
 /**
@@ -20,7 +20,7 @@ export function liesAbovePhreatic(
     Math.min(...lines.flatMap((line) => crossingsOf(down, line).map((crossing) => crossing.s)));
   const phreatic = depthTo(phreaticLines);
   if (!Number.isFinite(phreatic) || depthTo(faces) < phreatic) return false;
-  return phreaticLines.every((line) => nearestOnPolyline(line, at[0], at[1]).distance > slack);
+  return phreaticLines.every((line) => distanceToPolyline(line, at[0], at[1]) > slack);
 }
 
 /** A straight way down from a place, long enough to pass every line. */

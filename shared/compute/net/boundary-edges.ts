@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { firstOf, lastOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import type { NetModel } from '#shared/compute/net/net-model.ts';
@@ -15,7 +16,7 @@ export function boundaryEdges({ potentials, walls, reach }: NetModel): BoundaryE
   return potentials
     .flatMap(({ shape }) => [firstOf(shape), lastOf(shape)])
     .map((at) => {
-      const gaps = ends.map(([x, y]) => Math.hypot(x - at[0], y - at[1])).filter((gap) => gap <= reach);
+      const gaps = ends.map(([x, y]) => lengthOfVector(x - at[0], y - at[1])).filter((gap) => gap <= reach);
       return { at, gap: gaps.length === 0 ? 0 : Math.min(...gaps) };
     });
 }

@@ -1,4 +1,5 @@
 import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import {
   firstOf,
   lastOf,
@@ -198,7 +199,7 @@ function wayTo({ stop, cost, endS }: Arrival, graph: CarrierGraph): CarrierWay {
 function isClosed(shape: Polyline): boolean {
   const first = firstOf(shape);
   const last = lastOf(shape);
-  return Math.hypot(first[0] - last[0], first[1] - last[1]) <= 1e-3 * lengthOf(shape);
+  return lengthOfVector(first[0] - last[0], first[1] - last[1]) <= 1e-3 * lengthOf(shape);
 }
 
 /** Length along a carrier between two places; on a closed outline the shorter way round. */

@@ -1,6 +1,6 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
-import { firstOf, lastOf, lengthOf, nearestOnPolyline } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline, firstOf, lastOf, lengthOf } from '#shared/compute/geometry/polyline.ts';
 import type { FootedLine } from '#shared/compute/net/feet.ts';
 import type { NetLine } from '#shared/compute/net/net-lines.ts';
 import type { FlowOrder } from '#shared/compute/net/order.ts';
@@ -109,7 +109,7 @@ function channelsAlong(footed: FootedLine, flowLines: readonly NetLine[], slack:
   for (const flowLine of flowLines) {
     for (const crossing of crossingsOf(shape, flowLine.shape)) add(crossing.s);
     for (const [end, s] of [[firstOf(shape), 0] as const, [lastOf(shape), length] as const]) {
-      if (nearestOnPolyline(flowLine.shape, end[0], end[1]).distance <= near) add(s);
+      if (distanceToPolyline(flowLine.shape, end[0], end[1]) <= near) add(s);
     }
   }
   return { channels: Math.max(0, places.length - 1), complete: realStart && realEnd };

@@ -1,5 +1,5 @@
 import { distanceToRing, ringContains } from '#shared/compute/geometry/polygon.ts';
-import { nearestOnPolyline, type Polyline } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline, type Polyline } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { wayToLine } from '#shared/compute/net/shortest-way.ts';
 import type { Strip } from '#shared/compute/net/strips.ts';
@@ -57,7 +57,7 @@ export function straddlesWall(
   walls: readonly Polyline[],
   slack: number,
 ): boolean {
-  if (!walls.some((wall) => nearestOnPolyline(wall, at[0], at[1]).distance <= slack)) return false;
+  if (!walls.some((wall) => distanceToPolyline(wall, at[0], at[1]) <= slack)) return false;
   const lines = [read.before, read.after];
   return strips.some(
     ({ before, after, ring }) =>

@@ -1,7 +1,8 @@
 import { makeFinding } from '#shared/compute/findings.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import {
+  distanceToPolyline,
   lengthOf,
-  nearestOnPolyline,
   type Polyline,
   pointAlong,
   polylineOf,
@@ -63,8 +64,7 @@ export function offerToJoin(
   reach: number,
   inDoubt: ReadonlySet<string>,
 ): Finding[] {
-  const isFree = ({ at }: Tip) =>
-    !boundaries.some((shape) => nearestOnPolyline(shape, ...at).distance <= reach);
+  const isFree = ({ at }: Tip) => !boundaries.some((shape) => distanceToPolyline(shape, ...at) <= reach);
   const ended = whole.map(({ line }) => ({
     id: line.id,
     length: lengthOf(line.shape),
@@ -85,7 +85,7 @@ export function offerToJoin(
 /** True when each of two ends would run on to the other. */
 function face(a: Tip, b: Tip, most: number): boolean {
   const gap: Pair = [b.at[0] - a.at[0], b.at[1] - a.at[1]];
-  const size = Math.hypot(...gap);
+  const size = lengthOfVector(...gap);
   if (!(size > 0) || size > most) return false;
   const least = size * Math.cos((FACING_DEG * Math.PI) / 180);
   const along = a.onward[0] * gap[0] + a.onward[1] * gap[1];
@@ -120,7 +120,7 @@ function joinedPair(
   reach: number,
 ): { whole: WholeLine; at: Pair } | null {
   const value = commonValue(a.line, b.line);
-  const nearBoundary = boundaries.some((shape) => nearestOnPolyline(shape, ...tipA.at).distance <= reach);
+  const nearBoundary = boundaries.some((shape) => distanceToPolyline(shape, ...tipA.at) <= reach);
   const shape = nearBoundary ? null : polylineOf(pointsThrough(a.line.shape, tipA, b.line.shape, tipB));
   if (value === null || shape === null) return null;
   const line = { ...a.line, value, shape };
@@ -139,14 +139,14 @@ function tipsOf(shape: Polyline): [Tip, Tip] {
   const tip = (s: number, back: number, isFirst: boolean): Tip => {
     const at = pointAlong(shape, s);
     const from = pointAlong(shape, back);
-    const size = Math.hypot(at[0] - from[0], at[1] - from[1]) || 1;
+    const size = lengthOfVector(at[0] - from[0], at[1] - from[1]) || 1;
     return { at, onward: [(at[0] - from[0]) / size, (at[1] - from[1]) / size], isFirst };
   };
   return [tip(0, DIRECTION_PART * length, true), tip(length, (1 - DIRECTION_PART) * length, false)];
 }
 
 function runsOn(a: Tip, b: Tip, reach: number): boolean {
-  if (Math.hypot(a.at[0] - b.at[0], a.at[1] - b.at[1]) > reach) return false;
+  if (lengthOfVector(a.at[0] - b.at[0], a.at[1] - b.at[1]) > reach) return false;
   const along = -(a.onward[0] * b.onward[0] + a.onward[1] * b.onward[1]);
   return along >= Math.cos((MOST_TURN_DEG * Math.PI) / 180);
 }

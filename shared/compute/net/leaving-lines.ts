@@ -1,8 +1,8 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { type Crossing, crossingsOf } from '#shared/compute/geometry/crossing.ts';
 import {
+  distanceToPolyline,
   lengthOf,
-  nearestOnPolyline,
   type Polyline,
   pieceOf,
   pointAlong,
@@ -91,7 +91,7 @@ function runsThrough(line: InnerLine, edge: Edge, reach: number, isWrong: boolea
 /** True when the line goes farther than `reach` from the edge between a crossing and another place along it. */
 function departs({ shape }: InnerLine, edge: Edge, s: number, crossing: Crossing, reach: number): boolean {
   if (Math.abs(s - crossing.s) <= reach) return false;
-  return pieceOf(shape, s, crossing.s).some(([x, y]) => nearestOnPolyline(edge.shape, x, y).distance > reach);
+  return pieceOf(shape, s, crossing.s).some(([x, y]) => distanceToPolyline(edge.shape, x, y) > reach);
 }
 
 function liesInAir(line: InnerLine, lines: readonly NetLine[], up: Pair, reach: number): Finding[] {

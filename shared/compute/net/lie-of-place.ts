@@ -1,6 +1,6 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
 import { distanceToRing, ringContains } from '#shared/compute/geometry/polygon.ts';
-import { nearestOnPolyline } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline } from '#shared/compute/geometry/polyline.ts';
 import { liesAbovePhreatic } from '#shared/compute/net/above-phreatic.ts';
 import { stripAt } from '#shared/compute/net/hand-rule.ts';
 import type { HeadOfLine } from '#shared/compute/net/net-heads.ts';
@@ -51,9 +51,7 @@ export function lieOf(at: SheetPx, ground: ReadingGround): LieOfPlace {
       'The lines beside the point are not in order. Check the equipotentials there.',
     );
   }
-  const onFreeFace = ground.freeFaces.some(
-    (face) => nearestOnPolyline(face, at[0], at[1]).distance <= ground.slack,
-  );
+  const onFreeFace = ground.freeFaces.some((face) => distanceToPolyline(face, at[0], at[1]) <= ground.slack);
   return { in: 'strip', strip, before, after, onFreeFace };
 }
 

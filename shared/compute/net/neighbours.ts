@@ -1,4 +1,5 @@
 import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { lengthOf, type Polyline, pointAlong } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { castRay } from '#shared/compute/net/ray.ts';
@@ -77,7 +78,7 @@ function directionAt(shape: Polyline, s: number): Pair {
   const reach = 0.05 * lengthOf(shape);
   const a = pointAlong(shape, s - reach);
   const b = pointAlong(shape, s + reach);
-  const size = Math.hypot(b[0] - a[0], b[1] - a[1]);
+  const size = lengthOfVector(b[0] - a[0], b[1] - a[1]);
   return size > 0 ? [(b[0] - a[0]) / size, (b[1] - a[1]) / size] : [1, 0];
 }
 

@@ -1,6 +1,11 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
-import { lengthOf, nearestOnPolyline, type Polyline, pointAlong } from '#shared/compute/geometry/polyline.ts';
+import {
+  distanceToPolyline,
+  lengthOf,
+  type Polyline,
+  pointAlong,
+} from '#shared/compute/geometry/polyline.ts';
 import type { FootedLine } from '#shared/compute/net/feet.ts';
 import type { NetLine } from '#shared/compute/net/net-lines.ts';
 import type { Finding } from '#shared/contract/reading.ts';
@@ -104,7 +109,7 @@ function liesAlong(line: Polyline, other: Polyline, accuracyPx: number): boolean
   const allowed = Math.max(3 * accuracyPx, DUPLICATE_PART * length);
   for (let k = 0; k <= 8; k += 1) {
     const at = pointAlong(line, (k / 8) * length);
-    if (nearestOnPolyline(other, at[0], at[1]).distance > allowed) return false;
+    if (distanceToPolyline(other, at[0], at[1]) > allowed) return false;
   }
   return true;
 }

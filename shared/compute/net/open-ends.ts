@@ -1,8 +1,8 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
 import {
+  distanceToPolyline,
   lengthOf,
-  nearestOnPolyline,
   type Polyline,
   pieceOf,
   pointAlong,
@@ -77,9 +77,7 @@ function endOf(shape: Polyline, s: number, far: number): End {
 
 /** True when no boundary lies within reach of the end; a line that has run through one is told as that. */
 function stopsShort({ tip, half }: End, boundaries: readonly Polyline[], reach: number): boolean {
-  return !boundaries.some(
-    (shape) => nearestOnPolyline(shape, ...tip).distance <= reach || meets(half, shape),
-  );
+  return !boundaries.some((shape) => distanceToPolyline(shape, ...tip) <= reach || meets(half, shape));
 }
 
 /** True when the end lies past a flow line and nothing is traced ahead of it. */

@@ -1,6 +1,6 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import type { SheetPx } from '#shared/compute/frames.ts';
-import { nearestOnPolyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline, polylineOf } from '#shared/compute/geometry/polyline.ts';
 import { type HandReading, straddlesWall } from '#shared/compute/net/hand-rule.ts';
 import type { ReadingGround } from '#shared/compute/net/reading-ground.ts';
 import type { FieldAt, HandAt } from '#shared/compute/net/two-readings.ts';
@@ -100,7 +100,7 @@ function isNearOpenEnd(at: SheetPx, way: HandReading): boolean {
   const cell = way.toBefore + way.toAfter;
   return way.strip.ways.some(({ points, open }) => {
     const join = open ? polylineOf(points) : null;
-    return join !== null && nearestOnPolyline(join, at[0], at[1]).distance < cell;
+    return join !== null && distanceToPolyline(join, at[0], at[1]) < cell;
   });
 }
 

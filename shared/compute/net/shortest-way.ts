@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { nearestOnPolyline, type Polyline, verticesOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { thinned } from '#shared/compute/geometry/thin.ts';
@@ -61,7 +62,7 @@ function wayRoundCorners(
     effort.left -= STEP_EFFORT * corners.length;
     for (const to of corners) {
       if (to.reached) continue;
-      const onward = length + Math.hypot(to.at[0] - at[0], to.at[1] - at[1]);
+      const onward = length + lengthOfVector(to.at[0] - at[0], to.at[1] - at[1]);
       if (onward + to.rest < bestLength())
         steps.push({ from: at, to, length: onward, cost: onward + to.rest, before: round });
     }
@@ -88,7 +89,7 @@ function cornersOf(wall: Polyline, slack: number): readonly Pair[] {
 }
 
 function distanceToBox([x, y]: Pair, { box }: Polyline): number {
-  return Math.hypot(Math.max(box.minX - x, 0, x - box.maxX), Math.max(box.minY - y, 0, y - box.maxY));
+  return lengthOfVector(Math.max(box.minX - x, 0, x - box.maxX), Math.max(box.minY - y, 0, y - box.maxY));
 }
 
 type Arrival = { readonly length: number; readonly s: number };
@@ -106,7 +107,7 @@ function nearestSeen(
   if (near.distance >= limit) return null;
   if (seesPlace(from, near.at, walls, slack, effort)) return { length: near.distance, s: near.s };
   const vertices = verticesOf(goal)
-    .map((at, i) => ({ at, s: goal.cum[i]!, length: Math.hypot(at[0] - from[0], at[1] - from[1]) }))
+    .map((at, i) => ({ at, s: goal.cum[i]!, length: lengthOfVector(at[0] - from[0], at[1] - from[1]) }))
     .filter((vertex) => vertex.length < limit)
     .sort((a, b) => a.length - b.length);
   const seen = vertices.find(

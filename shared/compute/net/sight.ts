@@ -1,4 +1,5 @@
 import { crossingsOf } from '#shared/compute/geometry/crossing.ts';
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import {
   boxesMeet,
   type Polyline,
@@ -51,7 +52,7 @@ function blocks(wall: Polyline, sight: Polyline, slack: number): boolean {
 function excursion(wall: Polyline, from: number, to: number, sight: Polyline): number {
   const [ax, ay] = vertexOf(sight, 0);
   const [bx, by] = vertexOf(sight, 1);
-  const length = Math.hypot(bx - ax, by - ay);
+  const length = lengthOfVector(bx - ax, by - ay);
   let farthest = 0;
   for (let i = segmentAlong(wall, from) + 1; i < wall.cum.length && wall.cum[i]! < to; i += 1) {
     const [x, y] = vertexOf(wall, i);

@@ -1,8 +1,8 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { ringContains } from '#shared/compute/geometry/polygon.ts';
 import {
+  distanceToPolyline,
   lengthOf,
-  nearestOnPolyline,
   type Polyline,
   pointAlong,
   polylineOf,
@@ -53,7 +53,7 @@ function placeWithin(
   for (let k = 0; k <= PLACES_ASKED; k += 1) {
     const at = pointAlong(shape, (k / PLACES_ASKED) * length);
     if (!strips.some(({ ring }) => ringContains(ring, ...at))) continue;
-    if (outline.every((edge) => nearestOnPolyline(edge, ...at).distance > reach)) return at;
+    if (outline.every((edge) => distanceToPolyline(edge, ...at) > reach)) return at;
   }
   return null;
 }

@@ -1,3 +1,4 @@
+import { lengthOfVector } from '#shared/compute/geometry/length.ts';
 import { type Ring, ringContains, ringOf } from '#shared/compute/geometry/polygon.ts';
 import {
   firstOf,
@@ -20,7 +21,7 @@ export function solidBodies(
 ): Ring[] {
   return walls.flatMap((wall) => {
     const [start, end] = [firstOf(wall), lastOf(wall)];
-    if (Math.hypot(start[0] - end[0], start[1] - end[1]) > reach) return [];
+    if (lengthOfVector(start[0] - end[0], start[1] - end[1]) > reach) return [];
     const ring = ringOf(pieceOf(wall, 0, lengthOf(wall)));
     if (ring === null) return [];
     const holdsFlow = equipotentials.some((line) =>

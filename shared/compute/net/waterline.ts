@@ -1,5 +1,5 @@
 import { makeFinding } from '#shared/compute/findings.ts';
-import { firstOf, lastOf, nearestOnPolyline, verticesOf } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline, firstOf, lastOf, verticesOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
 import { elevationAt } from '#shared/compute/net/potentials.ts';
@@ -68,7 +68,6 @@ function questionFaces(
 function startOf(line: NetLine, faces: readonly NetLine[]): Pair {
   const first = firstOf(line.shape);
   const last = lastOf(line.shape);
-  const distance = (at: Pair) =>
-    Math.min(...faces.map((face) => nearestOnPolyline(face.shape, ...at).distance));
+  const distance = (at: Pair) => Math.min(...faces.map((face) => distanceToPolyline(face.shape, ...at)));
   return distance(first) <= distance(last) ? first : last;
 }

@@ -1,8 +1,8 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import {
+  distanceToPolyline,
   firstOf,
   lastOf,
-  nearestOnPolyline,
   type Polyline,
   polylineOf,
   verticesOf,
@@ -104,7 +104,7 @@ function courseOf(shapes: readonly Polyline[], model: NetModel): PhreaticCourse 
 }
 
 function distanceTo(potentials: readonly Potential[], at: Pair): number {
-  return Math.min(...potentials.map(({ shape }) => nearestOnPolyline(shape, ...at).distance));
+  return Math.min(...potentials.map(({ shape }) => distanceToPolyline(shape, ...at)));
 }
 
 function within(potentials: readonly Potential[], at: Pair, reach: number): Potential | null {

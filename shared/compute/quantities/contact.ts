@@ -1,5 +1,5 @@
 import { sheetPx } from '#shared/compute/frames.ts';
-import { nearestOnPolyline, type Polyline, verticesOf } from '#shared/compute/geometry/polyline.ts';
+import { distanceToPolyline, type Polyline, verticesOf } from '#shared/compute/geometry/polyline.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { distanceToSegment, thinned } from '#shared/compute/geometry/thin.ts';
 import { linesOfKind, type NetLine } from '#shared/compute/net/net-lines.ts';
@@ -26,7 +26,7 @@ export function creepRead(prepared: PreparedNet): CreepReading | null {
   const ends = (role: 'headwater' | 'outlet') =>
     model.potentials.filter((potential) => potential.role === role).map(({ shape }) => shape);
   const touches = (shapes: readonly Polyline[]) => (place: Pair) =>
-    shapes.some((shape) => nearestOnPolyline(shape, place[0], place[1]).distance <= model.reach);
+    shapes.some((shape) => distanceToPolyline(shape, place[0], place[1]) <= model.reach);
   const contact = contactOf(lines, touches(ends('headwater')), touches(ends('outlet')), model.reach);
   if (contact === null) return null;
   const natural = thinned(contact.points, 3 * ground.tracingAccuracyPx).map(([x, y]): Pair => {

@@ -25,43 +25,51 @@ export function conjugateGradient(
   const x = guess.slice();
   const r = new Float64Array(n);
   const p = new Float64Array(n);
-  const ap = multiply(a, x);
+  const q = new Float64Array(n);
+  const inverse = new Float64Array(n);
+  multiply(a, x, q);
   let rz = 0;
   let bb = 0;
   for (let i = 0; i < n; i += 1) {
-    r[i] = b[i]! - ap[i]!;
-    p[i] = r[i]! / a.diagonal[i]!;
+    inverse[i] = 1 / a.diagonal[i]!;
+    r[i] = b[i]! - q[i]!;
+    p[i] = r[i]! * inverse[i]!;
     rz += r[i]! * p[i]!;
-    bb += (b[i]! * b[i]!) / a.diagonal[i]!;
+    bb += b[i]! * b[i]! * inverse[i]!;
   }
   const enough = tolerance * tolerance * Math.max(bb, rz);
   let steps = 0;
   while (rz > enough && steps < mostSteps) {
-    const q = multiply(a, p);
-    let pq = 0;
-    for (let i = 0; i < n; i += 1) pq += p[i]! * q[i]!;
+    const pq = multiply(a, p, q);
     if (!(pq > 0)) break;
     const alpha = rz / pq;
     let next = 0;
     for (let i = 0; i < n; i += 1) {
       x[i] = x[i]! + alpha * p[i]!;
       r[i] = r[i]! - alpha * q[i]!;
-      next += (r[i]! * r[i]!) / a.diagonal[i]!;
+      next += r[i]! * r[i]! * inverse[i]!;
     }
     const beta = next / rz;
-    for (let i = 0; i < n; i += 1) p[i] = r[i]! / a.diagonal[i]! + beta * p[i]!;
+    for (let i = 0; i < n; i += 1) p[i] = r[i]! * inverse[i]! + beta * p[i]!;
     rz = next;
     steps += 1;
   }
   return { x, steps, converged: rz <= enough };
 }
 
-function multiply(a: SparseRows, x: Float64Array): Float64Array {
-  const y = new Float64Array(a.n);
-  for (let i = 0; i < a.n; i += 1) {
-    let sum = a.diagonal[i]! * x[i]!;
-    for (let k = a.starts[i]!; k < a.starts[i + 1]!; k += 1) sum += a.values[k]! * x[a.columns[k]!]!;
+/** Writes A·x into `y` and returns x·A·x. */
+function multiply(
+  { n, starts, columns, values, diagonal }: SparseRows,
+  x: Float64Array,
+  y: Float64Array,
+): number {
+  let dot = 0;
+  let k = 0;
+  for (let i = 0; i < n; i += 1) {
+    let sum = diagonal[i]! * x[i]!;
+    for (const end = starts[i + 1]!; k < end; k += 1) sum += values[k]! * x[columns[k]!]!;
     y[i] = sum;
+    dot += sum * x[i]!;
   }
-  return y;
+  return dot;
 }
