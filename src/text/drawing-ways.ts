@@ -17,8 +17,8 @@ const enDrawingWay = {
     ink: 'Follows the drawn line from click to click. D changes the way of drawing.',
   } satisfies Record<DrawingWay, string>,
   /** Steps, as undo lists them. */
-  drewFreehand: (line: string) => `drew a stroke of ${line}`,
-  followedInk: (line: string) => `followed the ink with ${line}`,
+  drewFreehand: (line: string) => `drew freehand: ${line}`,
+  followedInk: (line: string) => `followed the ink: ${line}`,
   noInk: 'No drawn line was found between the two clicks: they are joined straight.',
   scanUnread: 'The scan could not be read here: the two clicks are joined straight.',
 } as const;
