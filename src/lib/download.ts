@@ -15,3 +15,14 @@ export function downloadText(text: string, fileName: string, mediaType: string):
   link.click();
   URL.revokeObjectURL(url);
 }
+
+/** Lets the browser keep a file made on the page. */
+export function downloadBlob(blob: Blob, fileName: string): void {
+  const url = URL.createObjectURL(blob);
+  const link = document.createElement('a');
+  link.href = url;
+  link.download = fileName;
+  link.click();
+  // The browser reads it after the click; a large one not at once.
+  setTimeout(() => URL.revokeObjectURL(url), 60_000);
+}

@@ -12,8 +12,9 @@ import { COLOURS, type LineLook } from './line-look.ts';
 import type { SceneItem } from './scene.ts';
 
 const colour = COLOURS.point;
-const AXIS: LineLook = { colour, widthPx: 1.8, dashPx: [12, 3, 3, 3], end: 'bar', hatchPx: 0 };
-const UNFINISHED: LineLook = { ...AXIS, dashPx: [4, 3], end: 'ring' };
+/** The line of a profile itself. */
+export const PROFILE_LOOK: LineLook = { colour, widthPx: 1.8, dashPx: [12, 3, 3, 3], end: 'bar', hatchPx: 0 };
+const UNFINISHED: LineLook = { ...PROFILE_LOOK, dashPx: [4, 3], end: 'ring' };
 const CURVE: LineLook = { colour, widthPx: 1.6, dashPx: [], end: 'none', hatchPx: 0 };
 const ORDINATES: LineLook = { ...CURVE, widthPx: 0.6 };
 const TINT = { colour, alpha: 0.13, edged: false };
@@ -34,7 +35,7 @@ type About = {
 export function profileItems(id: string, value: Profile, about: About): SceneItem[] {
   const points = placesOnSheet(value, about.map);
   if (points.length === 0) return [];
-  const look = value.finished ? AXIS : UNFINISHED;
+  const look = value.finished ? PROFILE_LOOK : UNFINISHED;
   const axis: SceneItem = { id, shape: 'line', points, look, strong: about.chosen };
   const read = value.finished ? about.reading?.profiles.find((each) => each.id === id) : undefined;
   return [...(read === undefined ? [] : diagramItems(id, read, about)), axis];
