@@ -13,6 +13,8 @@ export type IndexedSegment = {
 export type LineIndex = {
   /** The pieces whose upright boxes come within `radius` of `at`, in the order of the lines; same frame and unit. */
   near(at: Pair, radius: number): IndexedSegment[];
+  /** The pieces whose upright boxes meet an upright box, in no order. */
+  within(minX: number, minY: number, maxX: number, maxY: number): IndexedSegment[];
 };
 
 /**
@@ -30,7 +32,7 @@ export function indexLines(lines: ReadonlyArray<readonly Pair[]>): LineIndex {
     }
   });
   // The package refuses an empty tree.
-  if (segments.length === 0) return { near: () => [] };
+  if (segments.length === 0) return { near: () => [], within: () => [] };
   const tree = new Flatbush(segments.length);
   for (const { a, b } of segments) {
     tree.add(Math.min(a[0], b[0]), Math.min(a[1], b[1]), Math.max(a[0], b[0]), Math.max(a[1], b[1]));
@@ -41,5 +43,6 @@ export function indexLines(lines: ReadonlyArray<readonly Pair[]>): LineIndex {
       const found = tree.search(x - radius, y - radius, x + radius, y + radius);
       return found.sort((i, k) => i - k).map((i) => segments[i]!);
     },
+    within: (minX, minY, maxX, maxY) => tree.search(minX, minY, maxX, maxY).map((i) => segments[i]!),
   };
 }

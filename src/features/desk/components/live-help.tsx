@@ -47,7 +47,7 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
   const documentRevision = useStore(store, (state) => state.documentRevision);
   const view = useStore(views, (state) => state.view);
   const setOut = useMemo(() => readSetOut(document), [document]);
-  const words = helpWords(shown, placeWords(shown.at, document, setOut), {
+  const words = helpWords(shown, wordsOfPlace(shown.at, document, setOut), {
     document,
     reading,
     documentRevision,
@@ -98,7 +98,7 @@ async function wordsNow(store: DeskStore, source: LiveHelpSource): Promise<strin
   const { pointerAt, document } = store.getState();
   const at = shown?.at ?? (pointerAt === null ? null : sheetPx(...pointerAt));
   if (at === null) return text.nothing;
-  const place = placeWords(at, document, readSetOut(document));
+  const place = wordsOfPlace(at, document, readSetOut(document));
   const read = await store.headAt([at[0], at[1]]);
   const head = read === null ? null : { ...read, at };
   const words =
@@ -108,7 +108,7 @@ async function wordsNow(store: DeskStore, source: LiveHelpSource): Promise<strin
   return words.length === 0 ? deskViewText.pixels(at[0], at[1]) : `${words.join('. ')}.`;
 }
 
-function placeWords(at: SheetPx, document: FlowNetDocument, setOut: SetOut): string[] {
+function wordsOfPlace(at: SheetPx, document: FlowNetDocument, setOut: SetOut): string[] {
   const words = wordsAt([at[0], at[1]], document, setOut);
   return words === null ? [] : [deskViewText.elevation(words), deskViewText.offset(words)];
 }

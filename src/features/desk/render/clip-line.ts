@@ -40,7 +40,7 @@ function between(a: SheetPoint, b: SheetPoint, t: number): SheetPoint {
 }
 
 /** Part of a segment inside a frame as two numbers from 0 to 1; null when none is. Liang and Barsky (1984). */
-function clippedPart(a: SheetPoint, b: SheetPoint, frame: SheetFrame): [number, number] | null {
+export function clippedPart(a: SheetPoint, b: SheetPoint, frame: SheetFrame): [number, number] | null {
   const [left, top, width, height] = frame;
   const dx = b[0] - a[0];
   const dy = b[1] - a[1];

@@ -1,3 +1,5 @@
+import type { Rect, TakenSpace } from './taken-space.ts';
+
 /**
  * Something with words that has to stand apart from the others: its place and the size of its box in screen pixels of
  * the whole sheet at the present zoom, and the distances from its place to the middle of the box that may be tried,
@@ -10,21 +12,24 @@ export type Placeable = {
   readonly widthPx: number;
   readonly heightPx: number;
   readonly offsets: ReadonlyArray<readonly [number, number]>;
+  /** Other places at which the box may stand with its middle, asked for one by one once none of the offsets is free. */
+  readonly elsewhere?: () => Iterable<readonly [number, number]>;
+  /** Where there is no room at all: true to leave it out, false to put it at its first offset all the same. */
+  readonly mayGo?: boolean;
 };
 
-export type Rect = {
-  readonly left: number;
-  readonly top: number;
-  readonly right: number;
-  readonly bottom: number;
+/** Where something went: its place, and from there to the middle of its box. Screen pixels of the whole sheet. */
+export type Placed = {
+  readonly at: readonly [number, number];
+  readonly offset: readonly [number, number];
 };
 
 export const LABEL_HEIGHT_PX = 17;
 const CHARACTER_PX = 6.7;
 const PADDING_PX = 10;
 const GAP_PX = 1.5;
-/** Distances from a line's end that are tried in turn: just below, then in rows below, then above. */
-const ROWS_PX = [16, 36, 56, 76, 96, -16, -36, 116];
+/** Distances from a line's end that are tried in turn: just below, then in a second row tied to it by a thin line. */
+const ROWS_PX = [16, 36];
 /** Steps to the side that are tried in each row. */
 const SHIFTS_PX = [0, 24, -24];
 
@@ -44,36 +49,34 @@ export function rectAbout(x: number, y: number, widthPx: number, heightPx: numbe
 }
 
 /**
- * Where each thing goes, as one of its offsets: the first at which it covers nothing that is taken, which is then
- * taken too (`taken` grows). Where none is free it goes to its first. Things are placed from left to right, so that
- * the same things get the same places whatever order they were made in.
+ * Where each thing goes: the first of its places at which it covers nothing that is taken, which is then taken too
+ * (`taken` grows); null for one that is left out for want of room. Things are placed from left to right, so that the same
+ * things get the same places whatever order they were made in, and wherever the sheet is panned to.
  */
-export function placeApart(
-  things: readonly Placeable[],
-  taken: Rect[],
-): Map<string, readonly [number, number]> {
-  const chosen = new Map<string, readonly [number, number]>();
+export function placeApart(things: readonly Placeable[], taken: TakenSpace): Map<string, Placed | null> {
+  const chosen = new Map<string, Placed | null>();
   const ordered = [...things].sort((a, b) => a.x - b.x || a.y - b.y || (a.id < b.id ? -1 : 1));
   for (const thing of ordered) {
-    const offset =
-      thing.offsets.find((candidate) => isFree(boxOf(thing, candidate), taken)) ?? thing.offsets[0];
-    if (offset === undefined) continue;
-    taken.push(boxOf(thing, offset));
-    chosen.set(thing.id, offset);
+    const placed = placeFor(thing, taken);
+    if (placed !== null) taken.add(boxOf(thing, placed));
+    chosen.set(thing.id, placed);
   }
   return chosen;
 }
 
-function boxOf(thing: Placeable, [dx, dy]: readonly [number, number]): Rect {
-  return rectAbout(thing.x + dx, thing.y + dy, thing.widthPx, thing.heightPx);
+function placeFor(thing: Placeable, taken: TakenSpace): Placed | null {
+  const at = [thing.x, thing.y] as const;
+  for (const offset of thing.offsets) {
+    if (taken.isFree(boxOf(thing, { at, offset }))) return { at, offset };
+  }
+  for (const place of thing.elsewhere?.() ?? []) {
+    const placed = { at: place, offset: [0, 0] } as const;
+    if (taken.isFree(boxOf(thing, placed))) return placed;
+  }
+  const first = thing.offsets[0];
+  return thing.mayGo === true || first === undefined ? null : { at, offset: first };
 }
 
-function isFree(rect: Rect, taken: readonly Rect[]): boolean {
-  return !taken.some(
-    (other) =>
-      rect.left < other.right &&
-      other.left < rect.right &&
-      rect.top < other.bottom &&
-      other.top < rect.bottom,
-  );
+export function boxOf(thing: Pick<Placeable, 'widthPx' | 'heightPx'>, { at, offset }: Placed): Rect {
+  return rectAbout(at[0] + offset[0], at[1] + offset[1], thing.widthPx, thing.heightPx);
 }

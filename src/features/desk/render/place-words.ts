@@ -3,11 +3,13 @@ import {
   LABEL_OFFSETS,
   labelWidthPx,
   type Placeable,
+  type Placed,
   placeApart,
-  type Rect,
   rectAbout,
 } from './label-layout.ts';
+import { type PlacesAlong, placesAlong } from './places-along.ts';
 import type { SceneItem, SceneMark } from './scene.ts';
+import { createTakenSpace, type Rect } from './taken-space.ts';
 
 const POINT_SIZE_PX = 16;
 const NAME_HEIGHT_PX = 15;
@@ -24,43 +26,60 @@ const BALLOON_OFFSETS = [215, 325, 180, 0, 145, 35, 270, 90].map((degrees) => {
   ] as const;
 });
 
+/** Ids of labels in the scene are those of their lines with this before them. */
+export const LABEL_PREFIX = 'label ';
+
+/** A scene with its words in their places, and the labels for which there is no room. */
+export type PlacedScene = { readonly items: SceneItem[]; readonly crowded: SceneMark[] };
+
 /**
  * Gives the words of a scene places in which they do not cover one another or a point: names of points first, then
- * notes, then what explains a place, then the heads at the lines' ends, which can give way farthest. `zoom`: screen pixels per sheet pixel.
+ * notes, then what explains a place, then the heads at the lines' ends, which can move along their lines. A head that
+ * finds no room is left out, unless its line is chosen. `zoom`: screen pixels per pixel of the picture.
  */
-export function placeWords(items: readonly SceneItem[], zoom: number): SceneItem[] {
+export function placeWords(items: readonly SceneItem[], zoom: number): PlacedScene {
   const marks = items.filter((item): item is SceneMark => item.shape !== 'line' && item.shape !== 'area');
   const points = marks.filter((mark) => mark.shape === 'knownPoint' || mark.shape === 'readingPoint');
-  const taken: Rect[] = points.map(({ at }) =>
-    rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX),
-  );
-  taken.push(...ofShape(marks, 'doubt').map((mark) => doubtRect(mark, zoom)));
-  const offsets = new Map<string, readonly [number, number]>();
-  for (const group of [
-    points,
-    ofShape(marks, 'balloon'),
-    ofShape(marks, 'callout'),
-    ofShape(marks, 'label'),
-  ]) {
+  const taken = createTakenSpace([
+    ...points.map(({ at }) => rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX)),
+    ...ofShape(marks, 'doubt').map((mark) => doubtRect(mark, zoom)),
+  ]);
+  const along = placesAlong(items, zoom);
+  const places = new Map<string, Placed | null>();
+  const groups = [points, ofShape(marks, 'balloon'), ofShape(marks, 'callout'), ofShape(marks, 'label')];
+  for (const group of groups) {
     const placed = placeApart(
-      group.map((mark) => placeable(mark, zoom)),
+      group.map((mark) => placeable(mark, zoom, along)),
       taken,
     );
-    for (const [id, offset] of placed) offsets.set(id, offset);
+    for (const [id, place] of placed) places.set(id, place);
   }
-  return items.map((item) => {
-    const offsetPx = offsets.get(item.id);
-    return offsetPx === undefined || item.shape === 'line' || item.shape === 'area'
-      ? item
-      : { ...item, offsetPx };
-  });
+  const placedItems: SceneItem[] = [];
+  const crowded: SceneMark[] = [];
+  for (const item of items) {
+    const place = places.get(item.id);
+    if (place === undefined || item.shape === 'line' || item.shape === 'area') placedItems.push(item);
+    else if (place !== null) placedItems.push(movedTo(item, place, zoom));
+    else {
+      const shown = { ...item, offsetPx: LABEL_OFFSETS[0]! };
+      if (item.strong) placedItems.push(shown);
+      else crowded.push(shown);
+    }
+  }
+  return { items: placedItems, crowded };
+}
+
+/** What keeps its place keeps it to the last bit, so that nothing is drawn again for rounding. */
+function movedTo(mark: SceneMark, { at, offset }: Placed, zoom: number): SceneMark {
+  const stays = at[0] === mark.at[0] * zoom && at[1] === mark.at[1] * zoom;
+  return { ...mark, at: stays ? mark.at : [at[0] / zoom, at[1] / zoom], offsetPx: offset };
 }
 
 function ofShape(marks: readonly SceneMark[], shape: SceneMark['shape']): SceneMark[] {
   return marks.filter((mark) => mark.shape === shape);
 }
 
-function placeable(mark: SceneMark, zoom: number): Placeable {
+function placeable(mark: SceneMark, zoom: number, along: PlacesAlong): Placeable {
   const at = { id: mark.id, x: mark.at[0] * zoom, y: mark.at[1] * zoom };
   if (mark.shape === 'balloon') {
     return { ...at, widthPx: BALLOON_SIZE_PX, heightPx: BALLOON_SIZE_PX, offsets: BALLOON_OFFSETS };
@@ -70,7 +89,11 @@ function placeable(mark: SceneMark, zoom: number): Placeable {
     return { ...at, widthPx, heightPx: LABEL_HEIGHT_PX, offsets: calloutOffsets(widthPx) };
   }
   if (mark.shape === 'label') {
-    return { ...at, widthPx: labelWidthPx(mark.text), heightPx: LABEL_HEIGHT_PX, offsets: LABEL_OFFSETS };
+    const size = { widthPx: labelWidthPx(mark.text), heightPx: LABEL_HEIGHT_PX };
+    if (!mark.id.startsWith(LABEL_PREFIX)) return { ...at, ...size, offsets: LABEL_OFFSETS };
+    const lineId = mark.id.slice(LABEL_PREFIX.length);
+    const elsewhere = () => along.of(lineId, mark.at, mark.text);
+    return { ...at, ...size, offsets: LABEL_OFFSETS, elsewhere, mayGo: true };
   }
   const widthPx = mark.text.length * NAME_CHARACTER_PX;
   const offsets = mark.shape === 'knownPoint' ? belowFirst(widthPx) : besideFirst(widthPx);

@@ -1,8 +1,8 @@
 import { indexLines, type LineIndex } from '#shared/compute/geometry/line-index.ts';
-import type { LineEnd, Piece } from '#shared/compute/geometry/near-places.ts';
+import { type LineEnd, nearestOnPieces, type Piece } from '#shared/compute/geometry/near-places.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import { entitiesOf, type FlowNetDocument, type TracedLine } from '#shared/contract/document.ts';
-import { isHidden } from './pick.ts';
+import { isHidden, reachOf } from './pick.ts';
 import type { ToolContext } from './tool-types.ts';
 
 type Traced = { readonly id: string; readonly value: TracedLine };
@@ -50,4 +50,10 @@ export function shownEnds(context: ToolContext, except: string | null): LineEnd<
       { id, at: points.at(-1)!, inward: points.at(-2)! },
     ];
   });
+}
+
+/** The shown line nearest to a place within reach; null when there is none. */
+export function shownLineAt(context: ToolContext, at: Pair): string | null {
+  const reach = reachOf(context);
+  return nearestOnPieces(piecesNear(context, at, reach, null), at, reach)?.id ?? null;
 }

@@ -11,6 +11,7 @@ import type { EditEvent } from '../model/pending-edit.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import type { ToolOverlay } from '../model/tool-overlay.ts';
 import { editStep } from './edit-step.ts';
+import { shownLineAt } from './snap-lines.ts';
 import { overlayOf, stepTool } from './tool-set.ts';
 import {
   AT_REST,
@@ -36,6 +37,8 @@ export type ToolHost = {
   overlay(at: SheetPx | null, keys: Modifiers, view: HostView): ToolOverlay;
   /** True while the tool keeps the pointer, so that the sheet must not be panned by it. */
   grabs(): boolean;
+  /** The shown line nearest to a place within reach; null when there is none. */
+  lineAt(at: SheetPx, view: HostView): string | null;
   /** The set-out section of the document as it is now; null before it is set out. */
   map(): SectionMap | null;
 };
@@ -113,6 +116,7 @@ export function createToolHost(store: DeskStore, ink: InkClient | null = null): 
       return overlay;
     },
     grabs: () => isGrabbing(state),
+    lineAt: (at, view) => shownLineAt(contextFor(view), at),
     map: () => mapOf(store.getState().document),
   };
 }

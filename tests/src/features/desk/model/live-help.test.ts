@@ -188,11 +188,9 @@ describe('what is told of a line while it is drawn', () => {
     const ask = (k: number) =>
       liveHelpOf(inHand([...points, [2020 + (k % 9), 2780 - (k % 5)]]), { document, ...nothingRead });
     expect(ask(0).cells).toHaveLength(2);
-    const taken = Array.from({ length: 200 }, (_, k) => {
-      const began = performance.now();
-      ask(k);
-      return performance.now() - began;
-    }).sort((a, b) => a - b);
-    expect(taken[100]).toBeLessThan(2);
+    // The processor's time: the clock's depends on what else the machine does.
+    const began = process.cpuUsage();
+    for (let k = 0; k < 300; k += 1) ask(k);
+    expect(process.cpuUsage(began).user / 1000 / 300).toBeLessThan(2);
   });
 });
