@@ -9,14 +9,15 @@ import type { ToolOverlay } from './tool-overlay.ts';
  */
 export function lineInHand(
   { document, draft, preview }: Pick<DeskState, 'document' | 'draft' | 'preview'>,
-  overlay: Pick<ToolOverlay, 'rubber'>,
+  overlay: Pick<ToolOverlay, 'rubber' | 'path'>,
 ): LineInHand | null {
   const next = overlay.rubber?.at(-1);
   if (draft !== null && next !== undefined) {
     const value = document.entities[draft.lineId]?.value;
     if (value?.kind !== 'line') return null;
     const drawn = draft.atStart ? [...value.points].reverse() : value.points;
-    const points = [...drawn, [next[0], next[1]] as SheetPoint];
+    // Along the ink or through a curve it does not run straight to the pointer.
+    const points = [...drawn, ...(overlay.path ?? []), [next[0], next[1]] as SheetPoint];
     return { id: draft.lineId, value, points, index: points.length - 1 };
   }
   const [id, ...others] = Object.keys(preview);

@@ -50,6 +50,8 @@ type About = {
   readonly hiddenKinds: readonly HideableKind[];
 };
 
+/** A shorter piece of a line drawn freehand tells how the hand trembled, and no direction. Sheet pixels. */
+const LEAST_SEGMENT_PX = 12;
 /** Most angles told at once: those at both ends of a segment. */
 const MOST_MEETINGS = 2;
 
@@ -99,8 +101,9 @@ function meetingsAt(
 ): MeetingSeen[] {
   const tip = mapped(map, ...points[index]!);
   const met: Met[] = [];
-  for (const neighbour of [points[index - 1], points[index + 1]]) {
-    const from = neighbour === undefined ? null : mapped(map, ...neighbour);
+  for (const step of [-1, 1]) {
+    const neighbour = pointBeside(points, index, step);
+    const from = neighbour === null ? null : mapped(map, ...neighbour);
     if (from === null || (from[0] === tip[0] && from[1] === tip[1])) continue;
     const segment = polylineFromFlat(Float64Array.of(...from, ...tip));
     const along: Pair = [tip[0] - from[0], tip[1] - from[1]];
@@ -123,6 +126,20 @@ function meetingsAt(
   return once
     .slice(0, MOST_MEETINGS)
     .map(({ kind, angleDeg, wantsRight }) => ({ kind, angleDeg, wantsRight }));
+}
+
+/**
+ * The next point of a line, or where its points are dense the first that is far enough away to give a direction; null at
+ * its end. `step`: −1 backwards, 1 onwards.
+ */
+function pointBeside(points: readonly SheetPoint[], index: number, step: number): SheetPoint | null {
+  const [x, y] = points[index]!;
+  let found: SheetPoint | null = null;
+  for (let i = index + step; i >= 0 && i < points.length; i += step) {
+    found = points[i]!;
+    if (Math.hypot(found[0] - x, found[1] - y) >= LEAST_SEGMENT_PX) break;
+  }
+  return found;
 }
 
 /** Where a segment meets a line: the crossing nearest to its tip, else the end that lies on the line to within reach. */

@@ -2,15 +2,15 @@ import type { SheetPx } from '#shared/compute/frames.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
 
 /**
- * To what a place near existing lines snaps, the first before the others: an end of a line; where two lines cross; one
- * of the places a line was clicked through; where the segment drawn meets a line at a right angle; anywhere along a
- * boundary or another line; straight on beyond the end of a line.
+ * To what a place near existing lines snaps, the first before the others: an end of a line; where two lines cross; where
+ * the segment drawn meets a line at a right angle; one of the places a line was clicked through, which a line drawn
+ * freehand has everywhere; anywhere along a boundary or another line; straight on beyond the end of a line.
  */
 export const SNAP_KINDS = [
   'end',
   'crossing',
-  'vertex',
   'rightAngle',
+  'vertex',
   'boundary',
   'line',
   'extension',
