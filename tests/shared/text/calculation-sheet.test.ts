@@ -1,9 +1,14 @@
 import { describe, expect, it } from 'vitest';
 import { readNet } from '#shared/compute/read-net.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NoteDto } from '#shared/contract/notes.ts';
+import type { SheetSource } from '#shared/text/calculation-sheet/content.ts';
+import { inputsChapter } from '#shared/text/calculation-sheet/inputs.ts';
+import { methodChapter } from '#shared/text/calculation-sheet/method.ts';
 import { notesUntil } from '#shared/text/calculation-sheet/record.ts';
 import { lowered, powerText, raised, richRuns } from '#shared/text/calculation-sheet/rich-text.ts';
 import { sectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
+import { withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 
@@ -78,5 +83,35 @@ describe('the figure of the section', () => {
   it('turns the direction of flow with the drawing', () => {
     const sides = [turn(false).figure.flow, turn(true).figure.flow];
     expect(sides.sort()).toEqual(['left', 'right']);
+  });
+});
+
+describe('lines adopted from the computed net', () => {
+  const { net, pxPerUnit } = EXACT_NETS[0]!;
+  const document = exactNetDocument(net, { pxPerUnit });
+  const textOf = (of: FlowNetDocument) => {
+    const reading = readNet(of);
+    const source = {
+      document: of,
+      reading,
+      drawing: { number: 'HF-114', title: 'Section', revision: 'C', sha256: 'ab12' },
+      section: { name: 'B–B', chainage: '212' },
+      pageNumber: 1,
+    } as SheetSource;
+    return JSON.stringify([methodChapter(source), inputsChapter(source)]);
+  };
+
+  it('are named so in the table of lines, and the method says what that makes of the figures', () => {
+    const adopted = withLines(document, 'equipotential', (value, i) =>
+      i === 0 ? { ...value, origin: 'adopted' } : value,
+    );
+    const text = textOf(adopted);
+    expect(text).toContain('equipotential, adopted');
+    expect(text).toContain('One line of the net was adopted from the computed net');
+    expect(text).toContain('agree with that solution by construction');
+  });
+
+  it('are not spoken of where there are none', () => {
+    expect(textOf(document)).not.toContain('adopted');
   });
 });
