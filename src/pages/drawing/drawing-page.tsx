@@ -14,7 +14,7 @@ import { AppFrame } from '../app-frame.tsx';
 import { useDamLive } from '../use-dam-live.ts';
 import { DrawingPreparation } from './drawing-preparation.tsx';
 import { PutDrawingAway } from './put-drawing-away.tsx';
-import { SheetAndSections } from './sheet-and-sections.tsx';
+import { SheetPart } from './sheet-part.tsx';
 
 export function DrawingPage() {
   const { drawingId = '' } = useParams();
@@ -48,7 +48,7 @@ export function DrawingPage() {
           </p>
         )}
         <DrawingPreparation drawing={drawing} canEdit={can.includes('drawing.edit')} />
-        {sheet ? <SheetAndSections key={sheet.id} drawing={drawing} sheet={sheet} can={can} /> : null}
+        {sheet ? <SheetPart key={sheet.id} drawing={drawing} sheet={sheet} can={can} /> : null}
         <div className="mt-4 grid grid-cols-[minmax(0,1fr)] gap-4 lg:grid-cols-2">
           <Panel title={text.fields}>
             <TitleForm key={drawing.id} drawing={drawing} canEdit={can.includes('drawing.edit')} />

@@ -3,12 +3,14 @@ import { Button } from '#client/components/button.tsx';
 import { CheckField } from '#client/components/field.tsx';
 import { useNotice } from '#client/components/notice.tsx';
 import { Empty, Panel } from '#client/components/panel.tsx';
+import { ShownBy } from '#client/features/clean-up/components/shown-by.tsx';
 import { useCreateSection, useEditSection } from '#client/features/drawings/api/drawing-mutations.ts';
 import type { Frame } from '#client/features/drawings/components/frame.ts';
 import { PagePicker } from '#client/features/drawings/components/page-picker.tsx';
 import { SectionForm } from '#client/features/drawings/components/section-form.tsx';
 import { SectionItem } from '#client/features/drawings/components/section-item.tsx';
 import { SheetWithFrames } from '#client/features/drawings/components/sheet-with-frames.tsx';
+import { cleanUpText } from '#client/text/clean-up.ts';
 import { drawingName, drawingsText as text } from '#client/text/drawings.ts';
 import type { DamAction } from '#shared/contract/actions.ts';
 import type { DrawingDto, SectionDto, SheetDto } from '#shared/contract/drawings.ts';
@@ -17,6 +19,8 @@ interface SheetAndSectionsProps {
   drawing: DrawingDto;
   sheet: SheetDto;
   can: readonly DamAction[];
+  /** Null where the sheet may not be cleaned up. */
+  onCleanUp: (() => void) | null;
 }
 
 /** A section being framed: a new one, or one that is changed. */
@@ -26,7 +30,7 @@ interface Framing {
 }
 
 /** One sheet at the left, its sections at the right; while a section is framed, a drag on the sheet sets its frame. */
-export function SheetAndSections({ drawing, sheet, can }: SheetAndSectionsProps) {
+export function SheetAndSections({ drawing, sheet, can, onCleanUp }: SheetAndSectionsProps) {
   const [framing, setFraming] = useState<Framing | null>(null);
   const [showPutAway, setShowPutAway] = useState(false);
   const all = drawing.sections.filter((section) => section.sheetId === sheet.id);
@@ -41,9 +45,19 @@ export function SheetAndSections({ drawing, sheet, can }: SheetAndSectionsProps)
         look="register"
         className="min-w-0 self-start"
         title={text.sheet(sheet.pageNumber)}
-        action={<SheetFacts sheet={sheet} />}
+        action={
+          <>
+            <SheetFacts sheet={sheet} />
+            {onCleanUp && !framing ? (
+              <Button look="quiet" onClick={onCleanUp}>
+                {cleanUpText.cleanUp}
+              </Button>
+            ) : null}
+          </>
+        }
       >
         <PagePicker sheets={drawing.sheets} chosen={sheet} />
+        {sheet.shown ? <ShownBy sheetId={sheet.id} canChange={can.includes('drawing.edit')} /> : null}
         {sheet.note ? (
           <p className="m-0 border-b border-rule bg-doubt px-3.5 py-2 text-attention">{sheet.note}</p>
         ) : null}
