@@ -33,6 +33,7 @@ const enDeskPaletteText = {
     readingPoint: 'Reading point',
     profile: 'Profile',
     soilPlace: 'Place of a soil',
+    ruler: 'Ruler',
     note: 'Note',
   } satisfies Record<PaletteTool, string>,
   boundaries: {
@@ -49,7 +50,7 @@ const enDeskPaletteText = {
     select:
       'Click a line or a point to choose it. Drag its vertices, double-click a segment to put one in, Delete removes what is chosen.',
     knownPoint:
-      'Click a place whose offset and elevation are printed on the drawing. Two set the section out, more check it.',
+      'Click a place whose offset or elevation is printed on the drawing; it goes to the crossing of drawn lines, Alt stops that. Two set the section out, more check it.',
     equipotential:
       'Click along the line. It snaps to lines and ends; Ctrl stops that, Shift keeps level, plumb or 45°.',
     flowLine:
@@ -62,6 +63,8 @@ const enDeskPaletteText = {
       'Click along a base, a slip surface, a filter boundary or a borehole. It snaps to traced lines; Ctrl stops that, Shift keeps level, plumb or 45°.',
     soilPlace: 'Click inside each region of the soil. Backspace takes the last place back, Escape ends it.',
     note: 'Click a point, a line or a place to write a note about it.',
+    ruler:
+      'Click from place to place to measure. It snaps to traced lines; Ctrl stops that, Shift keeps level, plumb or 45°. Enter ends, Escape clears.',
   } satisfies Record<ToolId, string>,
   tracing: (kind: string, points: number) =>
     `Tracing: ${kind}, ${points} ${points === 1 ? 'point' : 'points'}.`,

@@ -1,5 +1,6 @@
 import type { DeskStore } from '../model/desk-state.ts';
 import { nextDrawingWay } from '../model/drawing-way.ts';
+import { toggleGrid } from '../model/setting-out-aids.ts';
 import { lineChoiceOf, type ToolId } from '../model/tool-choice.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import type { HostView, ToolHost } from '../tools/tool-host.ts';
@@ -15,9 +16,12 @@ export const TOOL_KEYS: Readonly<Record<string, ToolId>> = {
   r: 'readingPoint',
   l: 'profile',
   n: 'note',
+  m: 'ruler',
   v: 'select',
 };
 export const WATER_KEY = 'w';
+/** Lines of equal offset and elevation over the sheet. */
+export const GRID_KEY = 'g';
 /** Goes on to the next way of drawing lines. */
 export const WAY_KEY = 'd';
 /** Opens and closes the list of what is on the sheet by kind. */
@@ -97,6 +101,10 @@ export function deskKey(event: KeyboardEvent, target: Pick<KeyTarget, 'store'>):
   }
   if (key === WAY_KEY && drawsLines(target.store)) {
     nextDrawingWay();
+    return true;
+  }
+  if (key === GRID_KEY) {
+    toggleGrid();
     return true;
   }
   const tool = TOOL_KEYS[key];

@@ -7,14 +7,18 @@ import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { drawingWayChoice } from '../model/drawing-way.ts';
 import { createInkClient } from '../model/ink-client.ts';
 import type { LiveHelpSource } from '../model/live-help-source.ts';
+import { rulerOf } from '../model/ruler.ts';
+import { settingOutAids } from '../model/setting-out-aids.ts';
 import type { SheetRaster } from '../model/sheet-raster.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import { type SheetFrame, sheetZoom, type Viewport } from '../model/viewport.ts';
 import { buildSheetScene, type NoteBalloon, noteIdOf, partScene } from '../render/build-scene.ts';
+import { createGridLayer } from '../render/grid-layer.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
-import { LABEL_PREFIX } from '../render/place-words.ts';
+import { LABEL_PREFIX, type WordPlaces } from '../render/place-words.ts';
+import { rulerItems } from '../render/ruler-items.ts';
 import type { SceneItem } from '../render/scene.ts';
 import { itemsThrough } from '../render/seen-through.ts';
 import { createSheetRenderer, type SheetRenderer } from '../render/sheet-renderer.ts';
@@ -61,6 +65,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   const renderer = createSheetRenderer(options.layers, options.raster);
   const ink = createInkClient(sheet);
   const crossings = createCrossingClient(sheet);
+  const grid = createGridLayer(options.layers);
   const host = createToolHost(store, ink, crossings);
   const clicked = clickedPlacesOf(store);
   let pointer: { at: SheetPx; keys: Modifiers; view: HostView } | null = null;
@@ -70,6 +75,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let scene: readonly SceneItem[] = [];
   /** Labels for which there is no room, by their ids. */
   let crowded: ReadonlyMap<string, SceneItem> = new Map();
+  let words: { readonly zoom: number; readonly places: WordPlaces } | null = null;
   let active: readonly SceneItem[] = [];
 
   const view = () => views.getState().view;
@@ -96,17 +102,24 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       readOnly: state.readOnly,
       zoom: view().zoom,
       lineWeight: state.aids.lineWeight,
+      keptWords: isDragging(state) && words?.zoom === view().zoom ? words.places : null,
       seenAs: view().seenAs ?? null,
       frame: options.frame,
       clickedOn: clicked.among,
     });
     scene = built.items;
+    words = { zoom: view().zoom, places: built.places };
     crowded = new Map(built.crowded.map((label) => [label.id, label]));
     renderer.setScanLook({ faded: state.aids.fadePct / 100, inverted: state.aids.inverted });
     const parts = partScene(scene);
     active = parts.active;
     renderer.showBase(parts.base);
     showOverlay();
+    showGrid();
+  }
+
+  function showGrid(): void {
+    grid.show(settingOutAids.getState().showsGrid ? host.map() : null, view());
   }
 
   /** One scene for all that changes in the same turn. */
@@ -123,7 +136,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
         ? NO_OVERLAY
         : host.overlay(pointer.at, pointer.keys, { ...pointer.view, zoom: sheetZoom(view()) });
     const underPointer = overlayScene(overlay, lineChoiceOf(tool, boundaryKind)?.line ?? null);
-    const pointedAt = itemsThrough(underPointer, view().seenAs ?? null);
+    const measured = tool === 'ruler' ? rulerItems(rulerOf(store).getState()) : [];
+    const pointedAt = itemsThrough([...measured, ...underPointer], view().seenAs ?? null);
     renderer.showActive([...active, ...crowdedAtPointer(), ...pointedAt]);
     const magnified = (overlay.magnify || fingerHolds) && pointer !== null;
     options.help.follow(pointer?.at ?? null, overlay, sheetZoom(view()));
@@ -190,9 +204,15 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       if (pendingEdit !== null && pendingEdit !== before.pendingEdit) element.focus({ preventScroll: true });
     }),
     drawingWayChoice.subscribe(() => showOverlay()),
+    settingOutAids.subscribe(() => {
+      showOverlay();
+      showGrid();
+    }),
+    rulerOf(store).subscribe(() => showOverlay()),
     store.onLookAt((at) => views.lookAt(sheetPx(...at))),
     views.subscribe((state, before) => {
       renderer.setView(state.view);
+      showGrid();
       const { zoom, seenAs } = state.view;
       if (zoom !== before.view.zoom || seenAs !== before.view.seenAs) dueScene();
     }),
@@ -213,6 +233,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       sizes.disconnect();
       ink.close();
       crossings.close();
+      grid.destroy();
       for (const end of endings) end();
       element.ownerDocument.removeEventListener('keydown', key);
       element.removeEventListener('keyup', keyUp);
@@ -256,4 +277,9 @@ function looksDiffer(a: DeskState, b: DeskState): boolean {
     a.guides !== b.guides ||
     a.readOnly !== b.readOnly
   );
+}
+
+/** While something is dragged it is in the document as it was, and over it as it would be. */
+function isDragging({ preview }: DeskState): boolean {
+  return Object.keys(preview).length > 0;
 }

@@ -14,11 +14,14 @@ import type { NoteBalloon } from '../render/build-scene.ts';
 import { aboveFinger } from './above-finger.ts';
 import { DraftActions } from './draft-actions.tsx';
 import { EditPrompt } from './edit-prompt.tsx';
+import { GridSwitch } from './grid-switch.tsx';
 import { LiveHelp } from './live-help.tsx';
 import { MAGNIFIER_SIDE_PX, Magnifier } from './magnifier.tsx';
 import { PictureButton } from './picture-button.tsx';
 import type { PictureFacts } from './picture-plan.ts';
 import { PointerReadout } from './pointer-readout.tsx';
+import { RulerAtPointer } from './ruler-at-pointer.tsx';
+import { RulerPanel } from './ruler-panel.tsx';
 import { SectionViewSwitch } from './section-view-switch.tsx';
 import { HiddenHint, SheetAids } from './sheet-aids.tsx';
 import { createSheetController, type SheetController } from './sheet-controller.ts';
@@ -125,11 +128,13 @@ export function SheetView({
         {text.keysHelp}
       </span>
       <LiveHelp store={store} views={views} source={help} touched={finger !== null} />
+      <RulerAtPointer store={store} views={views} />
       <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 [&>*]:pointer-events-auto">
         <PointerReadout store={store} />
         <div className="ml-auto flex flex-wrap items-start justify-end gap-2">
           {pictureSwitch}
           <SectionViewSwitch store={store} views={views} />
+          <GridSwitch store={store} />
           <SheetAids store={store} noteCount={notes.length} />
           {picture && (
             <PictureButton
@@ -142,6 +147,7 @@ export function SheetView({
       <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
         <div className="flex flex-col items-start gap-2">
           <HiddenHint store={store} />
+          <RulerPanel store={store} />
           <EditPrompt store={store} />
           <DraftActions store={store} onAction={(action) => controller?.act(action)} />
         </div>

@@ -13,7 +13,7 @@ import { ToolHint } from './tool-hint.tsx';
 import { ToolIcon } from './tool-icons.tsx';
 
 const GROUPS: ReadonlyArray<{ title: string; tools: readonly PaletteTool[] }> = [
-  { title: text.setOut, tools: ['knownPoint', 'waterLevels'] },
+  { title: text.setOut, tools: ['knownPoint', 'waterLevels', 'ruler'] },
   { title: text.trace, tools: ['equipotential', 'flowLine', 'phreaticLine', 'boundary'] },
   { title: text.read, tools: ['readingPoint', 'profile', 'note'] },
 ];
@@ -75,7 +75,7 @@ function PaletteButton({ store, tool, column }: { store: DeskStore; tool: Palett
   return (
     <button
       type="button"
-      disabled={readOnly && tool !== 'note' && tool !== 'waterLevels'}
+      disabled={readOnly && tool !== 'note' && tool !== 'waterLevels' && tool !== 'ruler'}
       aria-pressed={tool === 'waterLevels' ? undefined : inHand}
       aria-keyshortcuts={letter}
       onClick={choose}

@@ -129,7 +129,7 @@ export function createDeskStore(opened: Opened, options: DeskStoreOptions = {}):
     redo: (count = 1) => takeSteps('undone', count),
     setTool(tool, boundary) {
       const { boundaryKind, readOnly } = store.getState();
-      if (readOnly && tool !== 'select' && tool !== 'note') return;
+      if (readOnly && tool !== 'select' && tool !== 'note' && tool !== 'ruler') return;
       store.setState({
         tool,
         boundaryKind: boundary ?? boundaryKind,

@@ -11,6 +11,7 @@ export type ToolId =
   | 'readingPoint'
   | 'profile'
   | 'soilPlace'
+  | 'ruler'
   | 'note';
 
 /** What the boundary tool draws: a kind of line, and for a submerged face whose level it carries. */

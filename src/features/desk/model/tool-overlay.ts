@@ -33,6 +33,10 @@ export type ToolOverlay = {
   /** How the line would run there where it does not run straight, and what is being drawn freehand. */
   readonly path?: readonly SheetPoint[] | null;
   readonly snap: Snap | null;
+  /** The crossing of two drawn lines to which a known point goes. */
+  readonly drawnCrossing?: SheetPx | null;
+  /** Near which a crossing of drawn lines is to be looked for. */
+  readonly seeksCrossing?: SheetPx | null;
   /** True where places should be set finer than the view shows. */
   readonly magnify: boolean;
   /** What an edit asked for would do, and the rectangle drawn about what is to be chosen. */

@@ -18,6 +18,10 @@ export function overlayScene(overlay: ToolOverlay, kind: LineKind | null): Scene
     items.push({ ...markAt('next', 'cross', to[0], to[1]), colour: COLOURS.ink });
   }
   if (overlay.snap !== null) items.push(...snapItems(overlay.snap, colour));
+  if (overlay.drawnCrossing) {
+    const [x, y] = overlay.drawnCrossing;
+    items.push({ ...markAt('drawnCrossing', 'snapCrossing', x, y), colour: COLOURS.ink });
+  }
   items.push(...sketchItems(overlay.sketches ?? []));
   return items;
 }

@@ -6,6 +6,7 @@ import type { DocumentEntity } from '#shared/contract/document.ts';
 import { selectOne } from '../model/selection.ts';
 import type { Snap } from '../model/tool-overlay.ts';
 import { constrained } from './constrain.ts';
+import { drawnCrossingAt } from './drawn-crossing.ts';
 import { keptPoint, withPointInserted } from './line-points.ts';
 import { isFree, type Mark, markAt, reachOf } from './pick.ts';
 import { snapAt } from './snap.ts';
@@ -152,16 +153,20 @@ function valueAt(state: Dragging, at: SheetPx, keys: Modifiers, context: ToolCon
   return null;
 }
 
+/** Where the thing dragged is, with the pointer at a place. */
+export function heldAt({ from, pressedAt }: Dragging, at: SheetPx): SheetPx {
+  return sheetPx(from[0] + at[0] - pressedAt[0], from[1] + at[1] - pressedAt[1]);
+}
+
 function placeFor(state: Dragging, at: SheetPx, keys: Modifiers, context: ToolContext): SheetPx {
-  const moved = sheetPx(
-    state.from[0] + at[0] - state.pressedAt[0],
-    state.from[1] + at[1] - state.pressedAt[1],
-  );
+  const moved = heldAt(state, at);
   if (state.target.kind === 'vertex') {
     const snap = snapWhileDragging(state.target, moved, keys, context);
     if (snap !== null) return snap.at;
   }
-  return keys.shift ? constrained(context, state.from, moved) : moved;
+  const held = context.document.entities[idOf(state.target)]?.value;
+  const crossing = held?.kind === 'knownPoint' ? drawnCrossingAt(moved, keys, context) : null;
+  return crossing ?? (keys.shift ? constrained(context, state.from, moved) : moved);
 }
 
 /** What a dragged vertex snaps to; the segment that it ends comes from the vertex beside it. */

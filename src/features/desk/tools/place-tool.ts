@@ -4,6 +4,7 @@ import { type EntityOf, entitiesOf, UNSAID } from '#shared/contract/document.ts'
 import type { NoteAnchor } from '#shared/contract/notes.ts';
 import { selectOne } from '../model/selection.ts';
 import { dragTo, grabMark, letGo } from './drag.ts';
+import { drawnCrossingAt } from './drawn-crossing.ts';
 import { keptPoint } from './line-points.ts';
 import { markAt, pickAt } from './pick.ts';
 import { rest, stay, type ToolContext, type ToolEvent, type ToolState, type ToolStep } from './tool-types.ts';
@@ -62,7 +63,9 @@ function markStep(
     case 'click':
       if (event.count > 1) return openChosen(context, kind);
       // A press on a point has taken hold of it; letting go without moving must not set a second one on it.
-      return markAt(context, event.at, [kind]) === null ? placed(make(event.at), context) : rest();
+      return markAt(context, event.at, [kind]) === null
+        ? placed(make(placeMeant(event, kind, context)), context)
+        : rest();
     case 'abandonDrag':
       return rest({ do: 'preview', values: {} });
     case 'takeBack':
@@ -73,6 +76,15 @@ function markStep(
     case 'cancel':
       return rest({ do: 'preview', values: {} }, { do: 'tool', tool: 'select', boundary: null });
   }
+}
+
+/** A known point goes to the crossing of two drawn lines near the pointer. */
+function placeMeant(
+  { at, keys }: Extract<ToolEvent, { type: 'click' }>,
+  kind: MarkKind,
+  context: ToolContext,
+): SheetPx {
+  return (kind === 'knownPoint' ? drawnCrossingAt(at, keys, context) : null) ?? at;
 }
 
 function placed(value: EntityOf<MarkKind>, context: ToolContext): ToolStep {

@@ -4,12 +4,16 @@ import type { SectionMap } from '#shared/compute/section-map.ts';
 import { readSetOut } from '#shared/compute/set-out.ts';
 import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
 import { clickedPlacesOf } from '../model/clicked-places.ts';
+import type { CrossingClient } from '../model/crossing-client.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { drawingWayChoice } from '../model/drawing-way.ts';
 import type { InkClient } from '../model/ink-client.ts';
 import type { EditEvent } from '../model/pending-edit.ts';
+import { rulerOf } from '../model/ruler.ts';
+import { settingOutAids } from '../model/setting-out-aids.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import type { ToolOverlay } from '../model/tool-overlay.ts';
+import { crossingReach } from './drawn-crossing.ts';
 import { editStep } from './edit-step.ts';
 import { shownLineAt } from './snap-lines.ts';
 import { overlayOf, stepTool } from './tool-set.ts';
@@ -44,7 +48,11 @@ export type ToolHost = {
 };
 
 /** Runs the tool in hand against a desk store: keeps the machine's state and carries its commands out. */
-export function createToolHost(store: DeskStore, ink: InkClient | null = null): ToolHost {
+export function createToolHost(
+  store: DeskStore,
+  ink: InkClient | null = null,
+  crossings: CrossingClient | null = null,
+): ToolHost {
   let state: ToolState = AT_REST;
   const clicked = clickedPlacesOf(store);
   let copied: readonly DocumentEntity[] = [];
@@ -70,6 +78,8 @@ export function createToolHost(store: DeskStore, ink: InkClient | null = null): 
       clicked,
       guides: state.guides,
       inkLook: ink?.newest() ?? null,
+      ruler: rulerOf(store).getState(),
+      crossingLook: settingOutAids.getState().takesCrossings ? (crossings?.newest() ?? null) : null,
       map: mapOf(document),
       newId: store.newId,
       ...view,
@@ -113,6 +123,10 @@ export function createToolHost(store: DeskStore, ink: InkClient | null = null): 
       const context = contextFor(view);
       const overlay = overlayOf(state, at, keys, context);
       if (context.way === 'ink' && overlay.rubber !== null) turn.look(lookReach(overlay.rubber, context));
+      const sought = overlay.seeksCrossing ?? null;
+      if (sought !== null && settingOutAids.getState().takesCrossings) {
+        crossings?.look(sought, crossingReach(context));
+      }
       return overlay;
     },
     grabs: () => isGrabbing(state),
@@ -143,6 +157,9 @@ function perform(
       break;
     case 'intent':
       store.emitIntent(command.intent);
+      break;
+    case 'ruler':
+      rulerOf(store).setState(command.ruler);
       break;
     case 'ask':
       store.setPendingEdit(command.edit);

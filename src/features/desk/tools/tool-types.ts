@@ -1,9 +1,10 @@
 import type { SheetPx } from '#shared/compute/frames.ts';
-import type { LinearMap } from '#shared/compute/linear-map.ts';
 import type { FollowedPath } from '#shared/compute/ink/follow-over-sheet.ts';
+import type { LinearMap } from '#shared/compute/linear-map.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { DocumentEntity, FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { ClickedPlace, ClickedPlaces } from '../model/clicked-places.ts';
+import type { CrossingLook } from '../model/crossing-client.ts';
 import type { Draft, HideableKind } from '../model/desk-state.ts';
 import type { LocalOp } from '../model/document-ops.ts';
 import type { DrawingWay } from '../model/drawing-way.ts';
@@ -11,6 +12,7 @@ import type { GuidesByOwner } from '../model/guides.ts';
 import type { InkLook, InkReach } from '../model/ink-client.ts';
 import type { DeskIntent } from '../model/intents.ts';
 import type { PendingEdit } from '../model/pending-edit.ts';
+import type { Ruler } from '../model/ruler.ts';
 import type { Selection } from '../model/selection.ts';
 import type { BoundaryKind, LineChoice, ToolId } from '../model/tool-choice.ts';
 import type { SnapKind } from '../model/tool-overlay.ts';
@@ -103,6 +105,10 @@ export type ToolContext = {
   readonly guides: GuidesByOwner;
   /** The newest look at where the ink runs; null before the first. */
   readonly inkLook: InkLook | null;
+  /** What is being measured. */
+  readonly ruler: Ruler;
+  /** The newest look for a crossing of drawn lines; null before the first and where none are wanted. */
+  readonly crossingLook: CrossingLook | null;
   /** Screen pixels per sheet pixel. */
   readonly zoom: number;
   /** How near something has to be to be meant, screen pixels: larger for a finger. */
@@ -119,6 +125,7 @@ export type ToolCommand =
   | { do: 'preview'; values: Record<string, DocumentEntity> }
   | { do: 'tool'; tool: ToolId; boundary: BoundaryKind | null }
   | { do: 'intent'; intent: DeskIntent }
+  | { do: 'ruler'; ruler: Ruler }
   | { do: 'ask'; edit: PendingEdit | null }
   | { do: 'notice'; text: string }
   | { do: 'keep'; values: readonly DocumentEntity[] }

@@ -1,0 +1,108 @@
+import { gridText as text } from '#client/text/set-out.ts';
+import type { SectionMap } from '#shared/compute/section-map.ts';
+import { decimalsOf, type GridLine, sectionGridOf } from '../model/section-grid.ts';
+import type { Viewport } from '../model/viewport.ts';
+import { COLOURS } from './line-look.ts';
+
+const FONT = '12px "Public Sans", sans-serif';
+/** Pale on the sheet, with a halo of film, so that the grid is told from dark and from pale ground. */
+const LINE_ALPHA = 0.75;
+
+export type GridLayer = {
+  /** Shows the grid of a section in a view, or none with null; drawn with the next frame. */
+  show(map: SectionMap | null, view: Viewport): void;
+  destroy(): void;
+};
+
+/** Lies between the scan and the traces; a canvas that is there only while the grid is shown. */
+export function createGridLayer(host: HTMLElement): GridLayer {
+  let canvas: HTMLCanvasElement | null = null;
+  let wanted: { map: SectionMap; view: Viewport } | null = null;
+  let scheduled = 0;
+
+  function draw(): void {
+    scheduled = 0;
+    if (wanted === null) {
+      canvas?.remove();
+      canvas = null;
+      return;
+    }
+    canvas ??= inserted(host);
+    paintGrid(canvas, wanted.map, wanted.view);
+  }
+
+  return {
+    show(map, view) {
+      if (map === null && wanted === null) return;
+      wanted = map === null ? null : { map, view };
+      if (scheduled === 0) scheduled = requestAnimationFrame(draw);
+    },
+    destroy() {
+      cancelAnimationFrame(scheduled);
+      canvas?.remove();
+      canvas = null;
+    },
+  };
+}
+
+/** Over the tiles, which are the first layer of the host, and under everything else. */
+function inserted(host: HTMLElement): HTMLCanvasElement {
+  const canvas = host.ownerDocument.createElement('canvas');
+  canvas.setAttribute('aria-hidden', 'true');
+  canvas.dataset.layer = 'grid';
+  Object.assign(canvas.style, { position: 'absolute', left: '0', top: '0', pointerEvents: 'none' });
+  host.insertBefore(canvas, host.children[1] ?? null);
+  return canvas;
+}
+
+function paintGrid(canvas: HTMLCanvasElement, map: SectionMap, view: Viewport): void {
+  const ratio = globalThis.devicePixelRatio || 1;
+  const [width, height] = [Math.round(view.widthPx * ratio), Math.round(view.heightPx * ratio)];
+  if (canvas.width !== width || canvas.height !== height) {
+    Object.assign(canvas, { width, height });
+    Object.assign(canvas.style, { width: `${view.widthPx}px`, height: `${view.heightPx}px` });
+  }
+  const context = canvas.getContext('2d');
+  if (context === null) return;
+  context.setTransform(ratio, 0, 0, ratio, 0, 0);
+  context.clearRect(0, 0, view.widthPx, view.heightPx);
+  const grid = sectionGridOf(map, view);
+  if (grid === null) return;
+  paintLines(context, grid.lines);
+  context.font = FONT;
+  for (const line of grid.lines) {
+    const step = line.of === 'offset' ? grid.offsetStep : grid.elevationStep;
+    paintLabel(context, line, text[line.of](line.value, decimalsOf(step)));
+  }
+}
+
+function paintLines(context: CanvasRenderingContext2D, lines: readonly GridLine[]): void {
+  context.globalAlpha = LINE_ALPHA;
+  for (const [colour, width] of [
+    [COLOURS.film, 3],
+    [COLOURS.attention, 1],
+  ] as const) {
+    context.strokeStyle = colour;
+    context.lineWidth = width;
+    context.beginPath();
+    for (const { from, to } of lines) {
+      context.moveTo(...from);
+      context.lineTo(...to);
+    }
+    context.stroke();
+  }
+  context.globalAlpha = 1;
+}
+
+function paintLabel(context: CanvasRenderingContext2D, { of, label }: GridLine, words: string): void {
+  if (label === null) return;
+  const isOffset = of === 'offset';
+  context.textAlign = isOffset ? 'center' : 'left';
+  context.textBaseline = isOffset ? 'bottom' : 'middle';
+  const width = context.measureText(words).width + 6;
+  const [x, y] = label;
+  context.fillStyle = COLOURS.film;
+  context.fillRect(isOffset ? x - width / 2 : x - 3, isOffset ? y - 15 : y - 8, width, 16);
+  context.fillStyle = COLOURS.attention;
+  context.fillText(words, x, y);
+}
