@@ -32,6 +32,7 @@ export function createLiveHelp(store: DeskStore): LiveHelpSource {
   const state = createStore<{ readonly shown: HelpShown | null }>(() => ({ shown: null }));
   let head: HeadThere | null = null;
   let asked: SheetPx | null = null;
+  let before: readonly unknown[] = [];
 
   function ask(at: SheetPx): void {
     if (asked !== null && asked[0] === at[0] && asked[1] === at[1]) return;
@@ -48,6 +49,11 @@ export function createLiveHelp(store: DeskStore): LiveHelpSource {
     state,
     follow(pointer, overlay, zoom) {
       const { document, draft, preview, reading, hiddenKinds, aids } = store.getState();
+      // Asked for the scene and for the pointer, it answers once.
+      const { snap, path } = overlay;
+      const now = [document, draft, preview, reading, hiddenKinds, aids, pointer, snap?.kind, path];
+      if (now.every((part, i) => part === before[i])) return;
+      before = now;
       const hand =
         pointer === null || !aids.liveHelp ? null : lineInHand({ document, draft, preview }, overlay);
       if (hand === null) {

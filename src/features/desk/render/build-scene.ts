@@ -20,7 +20,7 @@ import type { SheetFrame } from '../model/viewport.ts';
 import { guideItems } from './guide-items.ts';
 import { handledVertices } from './handle-spacing.ts';
 import { COLOURS, lookOf, tracedLook, unfinishedLook, weighted } from './line-look.ts';
-import { LABEL_PREFIX, type PlacedScene, placeWords } from './place-words.ts';
+import { LABEL_PREFIX, type PlacedScene, placeWords, type WordPlaces } from './place-words.ts';
 import { profileItems } from './profile-items.ts';
 import type { MarkShape, SceneItem, SceneLine, SceneMark } from './scene.ts';
 import { itemsThrough } from './seen-through.ts';
@@ -50,6 +50,8 @@ export type SceneInput = {
   readonly readOnly: boolean;
   readonly zoom: number;
   readonly lineWeight: LineWeight;
+  /** Where words were, to stay there while something is dragged; left out, they are placed anew. */
+  readonly keptWords?: WordPlaces | null;
   /** Sheet pixels to pixels of the picture, as through which the sheet is seen; null = as it is drawn. */
   readonly seenAs: PlaneMap | null;
   /** The section's part of the sheet, outlined when the sheet holds more; null = the whole sheet. */
@@ -86,7 +88,7 @@ export function buildSheetScene(input: SceneInput): PlacedScene {
     ...doubtItems(input),
     ...noteItems(input),
   ];
-  return placeWords(itemsThrough(items, input.seenAs), input.zoom);
+  return placeWords(itemsThrough(items, input.seenAs), input.zoom, input.keptWords ?? null);
 }
 
 function frameItem(frame: SheetFrame | null): SceneLine[] {

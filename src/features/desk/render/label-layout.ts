@@ -31,7 +31,7 @@ const GAP_PX = 1.5;
 /** Distances from a line's end that are tried in turn: just below, then in a second row tied to it by a thin line. */
 const ROWS_PX = [16, 36];
 /** Steps to the side that are tried in each row. */
-const SHIFTS_PX = [0, 24, -24];
+const SHIFTS_PX = [0, 24, -24, 48, -48];
 
 /** Offsets of a head's label from the end of its line. */
 export const LABEL_OFFSETS = ROWS_PX.flatMap((row) => SHIFTS_PX.map((shift) => [shift, row] as const));

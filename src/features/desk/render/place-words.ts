@@ -1,3 +1,4 @@
+import type { SheetPoint } from '#shared/contract/document.ts';
 import {
   LABEL_HEIGHT_PX,
   LABEL_OFFSETS,
@@ -29,35 +30,33 @@ const BALLOON_OFFSETS = [215, 325, 180, 0, 145, 35, 270, 90].map((degrees) => {
 /** Ids of labels in the scene are those of their lines with this before them. */
 export const LABEL_PREFIX = 'label ';
 
+/** Where each mark with words went, and from which place of its own; null for one that found no room. */
+export type WordPlaces = ReadonlyMap<string, { readonly own: SheetPoint; readonly placed: Placed | null }>;
+
 /** A scene with its words in their places, and the labels for which there is no room. */
-export type PlacedScene = { readonly items: SceneItem[]; readonly crowded: SceneMark[] };
+export type PlacedScene = {
+  readonly items: SceneItem[];
+  readonly crowded: SceneMark[];
+  readonly places: WordPlaces;
+};
 
 /**
  * Gives the words of a scene places in which they do not cover one another or a point: names of points first, then
  * notes, then what explains a place, then the heads at the lines' ends, which can move along their lines. A head that
- * finds no room is left out, unless its line is chosen. `zoom`: screen pixels per pixel of the picture.
+ * finds no room is left out, unless its line is chosen. `zoom`: screen pixels per pixel of the picture. With `kept` words
+ * stay where they were, so that nothing jumps, and nothing is searched, while something is dragged.
  */
-export function placeWords(items: readonly SceneItem[], zoom: number): PlacedScene {
+export function placeWords(
+  items: readonly SceneItem[],
+  zoom: number,
+  kept: WordPlaces | null = null,
+): PlacedScene {
   const marks = items.filter((item): item is SceneMark => item.shape !== 'line' && item.shape !== 'area');
-  const points = marks.filter((mark) => mark.shape === 'knownPoint' || mark.shape === 'readingPoint');
-  const taken = createTakenSpace([
-    ...points.map(({ at }) => rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX)),
-    ...ofShape(marks, 'doubt').map((mark) => doubtRect(mark, zoom)),
-  ]);
-  const along = placesAlong(items, zoom);
-  const places = new Map<string, Placed | null>();
-  const groups = [points, ofShape(marks, 'balloon'), ofShape(marks, 'callout'), ofShape(marks, 'label')];
-  for (const group of groups) {
-    const placed = placeApart(
-      group.map((mark) => placeable(mark, zoom, along)),
-      taken,
-    );
-    for (const [id, place] of placed) places.set(id, place);
-  }
+  const places = kept === null ? placesFor(items, marks, zoom) : placesLike(kept, marks, zoom);
   const placedItems: SceneItem[] = [];
   const crowded: SceneMark[] = [];
   for (const item of items) {
-    const place = places.get(item.id);
+    const place = places.get(item.id)?.placed;
     if (place === undefined || item.shape === 'line' || item.shape === 'area') placedItems.push(item);
     else if (place !== null) placedItems.push(movedTo(item, place, zoom));
     else {
@@ -66,7 +65,44 @@ export function placeWords(items: readonly SceneItem[], zoom: number): PlacedSce
       else crowded.push(shown);
     }
   }
-  return { items: placedItems, crowded };
+  return { items: placedItems, crowded, places };
+}
+
+function placesFor(items: readonly SceneItem[], marks: readonly SceneMark[], zoom: number): WordPlaces {
+  const points = marks.filter((mark) => mark.shape === 'knownPoint' || mark.shape === 'readingPoint');
+  const taken = createTakenSpace([
+    ...points.map(({ at }) => rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX)),
+    ...ofShape(marks, 'doubt').map((mark) => doubtRect(mark, zoom)),
+  ]);
+  const along = placesAlong(items, zoom);
+  const places = new Map<string, { own: SheetPoint; placed: Placed | null }>();
+  for (const group of [
+    points,
+    ofShape(marks, 'balloon'),
+    ofShape(marks, 'callout'),
+    ofShape(marks, 'label'),
+  ]) {
+    const placed = placeApart(
+      group.map((mark) => placeable(mark, zoom, along)),
+      taken,
+    );
+    for (const { id, at } of group) places.set(id, { own: at, placed: placed.get(id) ?? null });
+  }
+  return places;
+}
+
+/** The places of before; what has moved keeps its distance from its own place, and what is new stays at it. */
+function placesLike(kept: WordPlaces, marks: readonly SceneMark[], zoom: number): WordPlaces {
+  const places = new Map<string, { own: SheetPoint; placed: Placed | null }>();
+  for (const { id, at } of marks) {
+    const before = kept.get(id);
+    if (before === undefined) continue;
+    const stays = before.own[0] === at[0] && before.own[1] === at[1];
+    const { placed } = before;
+    const moved = placed && { at: [at[0] * zoom, at[1] * zoom] as const, offset: placed.offset };
+    places.set(id, { own: at, placed: stays ? placed : moved });
+  }
+  return places;
 }
 
 /** What keeps its place keeps it to the last bit, so that nothing is drawn again for rounding. */

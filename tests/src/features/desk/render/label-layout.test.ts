@@ -109,6 +109,21 @@ describe('heads at the lines', () => {
     expect(overlaps(placeWords(items, 8).items, 8)).toBe(0);
   });
 
+  it('stay where they were while something is dragged, and follow what is', () => {
+    const before = placeWords(fence(40, 8), 1);
+    const dragged = fence(40, 8).map((item) => {
+      if (item.id !== `${LABEL_PREFIX}000` || item.shape !== 'label') return item;
+      return { ...item, at: [90, 380] as SheetPoint };
+    });
+    const now = placeWords(dragged, 1, before.places);
+    expect(now.crowded.map(({ id }) => id)).toEqual(before.crowded.map(({ id }) => id));
+    expect(markOf(now.items, '001')).toEqual(markOf(before.items, '001'));
+    expect(markOf(now.items, '000')).toMatchObject({
+      at: [90, 380],
+      offsetPx: markOf(before.items, '000')?.offsetPx,
+    });
+  });
+
   it('are placed for 200 crowded lines between two frames', () => {
     const items = fence(200, 6);
     placeWords(items, 1);
