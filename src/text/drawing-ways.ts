@@ -8,7 +8,7 @@ const enDrawingWay = {
     straight: 'Straight',
     smooth: 'Smooth',
     freehand: 'Freehand',
-    ink: 'Along the ink',
+    ink: 'Follow ink',
   } satisfies Record<DrawingWay, string>,
   hints: {
     straight: 'Straight from click to click. D changes the way of drawing.',

@@ -90,7 +90,7 @@ describe('drawing on a real scan', () => {
   it('a contour is followed along its ink in three clicks, and the line lies on dark pixels', async () => {
     await hand.sheet.focus();
     await page.keyboard.press('f');
-    for (const name of ['Smooth', 'Freehand', 'Along the ink']) {
+    for (const name of ['Smooth', 'Freehand', 'Follow ink']) {
       await page.keyboard.press('d');
       await way(name).waitFor();
     }
@@ -117,7 +117,7 @@ describe('drawing on a real scan', () => {
     hand = await takeDesk(page);
     await hand.sheet.focus();
     await page.keyboard.press('e');
-    await way('Along the ink').waitFor();
+    await way('Follow ink').waitFor();
     await page.getByRole('button', { name: 'Smooth', exact: true }).click();
     await hand.sheet.focus();
     const clicks: SheetPoint[] = [

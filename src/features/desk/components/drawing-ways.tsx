@@ -10,18 +10,20 @@ export function DrawingWays({ column }: { column: boolean }) {
     <fieldset
       className={classNames(
         'm-0 border-0 p-0',
-        column ? 'mt-0.5 mb-1.5 grid grid-cols-2 pr-2 pl-[42px]' : 'flex items-center',
+        column
+          ? 'mt-0.5 mb-1.5 grid grid-cols-[auto_auto] justify-start gap-x-2.5 pl-[46px]'
+          : 'flex items-center',
       )}
     >
       <legend className="sr-only">{text.title}</legend>
       {DRAWING_WAYS.map((way) => (
-        <Way key={way} way={way} chosen={way === chosen} />
+        <Way key={way} way={way} chosen={way === chosen} column={column} />
       ))}
     </fieldset>
   );
 }
 
-function Way({ way, chosen }: { way: DrawingWay; chosen: boolean }) {
+function Way({ way, chosen, column }: { way: DrawingWay; chosen: boolean; column: boolean }) {
   return (
     <button
       type="button"
@@ -29,7 +31,8 @@ function Way({ way, chosen }: { way: DrawingWay; chosen: boolean }) {
       title={text.hints[way]}
       onClick={() => chooseDrawingWay(way)}
       className={classNames(
-        'whitespace-nowrap border-0 bg-transparent px-1 py-1 text-left text-sm hover:bg-hover touch',
+        'whitespace-nowrap border-0 bg-transparent py-1 text-left text-sm hover:bg-hover touch',
+        !column && 'px-2.5',
         chosen && 'font-semibold underline decoration-2 underline-offset-4 decoration-equipotential',
       )}
     >
