@@ -1,7 +1,9 @@
 import * as z from 'zod/mini';
 import { defineRoute, type RouteRecord } from '#server/http/route-record.ts';
+import { createCarryAcrossService } from '#server/services/carry-across-service.ts';
 import { createSectionService } from '#server/services/section-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
+import { carriedSectionDto, carriedSectionInput } from '#shared/contract/carry-across.ts';
 import { id } from '#shared/contract/common.ts';
 import { sectionDto } from '#shared/contract/drawings.ts';
 import { sectionInput, sectionPatch } from '#shared/contract/nets.ts';
@@ -20,6 +22,17 @@ export const sectionRoutes: RouteRecord[] = [
     status: 201,
     handle: async ({ deps, params, body, actor }) =>
       inTransaction(deps, (tx) => createSectionService(tx).create(params.sheetId, body, actor)),
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/sheets/:sheetId/carried-sections',
+    access: { who: 'dam', action: 'section.edit', target: 'sheet' },
+    params: z.object({ sheetId: id }),
+    body: carriedSectionInput,
+    reply: carriedSectionDto,
+    status: 201,
+    handle: async ({ deps, params, body, actor }) =>
+      inTransaction(deps, (tx) => createCarryAcrossService(tx).carry(params.sheetId, body, actor)),
   }),
   defineRoute({
     method: 'patch',

@@ -40,7 +40,8 @@ function entitiesInOrder(file: FlowNetDocument): VersionedEntity[] {
     .sort((a, b) => (a.id < b.id ? -1 : 1));
 }
 
-function withIds(value: DocumentEntity, ids: ReadonlyMap<string, string>): DocumentEntity {
+/** The value with what it names by id named by the new ids. */
+export function withIds(value: DocumentEntity, ids: ReadonlyMap<string, string>): DocumentEntity {
   if (value.kind !== 'netCount' || value.countedIn === null) return value;
   return { ...value, countedIn: ids.get(value.countedIn.toLowerCase()) ?? value.countedIn };
 }

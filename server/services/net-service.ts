@@ -8,6 +8,7 @@ import type { LivePort } from '#server/live/live-port.ts';
 import type { netInput, netPatch } from '#shared/contract/nets.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
 import { writeEvent } from './event-writer.ts';
+import { withIds } from './net-file-ops.ts';
 import { lockNetsOfSection, lockSection, lockSectionOfNet } from './net-locks.ts';
 import { type NetPlace, placeOfNet, placeOfSection, refusePutAway } from './net-place.ts';
 import { firstNetEntities, newEntityRows } from './net-singles.ts';
@@ -45,10 +46,7 @@ export function createNetService({ manager, clock, live }: NetServiceDeps) {
 
   async function insertNet(net: Partial<NetEntity>, rows: DocumentEntityRow[]): Promise<void> {
     await manager.insert(NetEntity, net);
-    for (let first = 0; first < rows.length; first += ROWS_AT_ONCE) {
-      const some = rows.slice(first, first + ROWS_AT_ONCE);
-      await manager.insert(DocumentEntityRow, some as QueryDeepPartialEntity<DocumentEntityRow>[]);
-    }
+    await insertRows(manager, rows);
   }
 
   async function setArchived(netId: string, archivedAt: Date | null, actor: Actor): Promise<void> {
@@ -97,7 +95,12 @@ export function createNetService({ manager, clock, live }: NetServiceDeps) {
         // Ids sort by making: the copies are made in the order of their originals.
         order: { entityId: 'ASC' },
       });
-      const rows = sources.map((row) => copyOfRow(row, input.id, changeNumber, at));
+      const ids = new Map(sources.map((row) => [row.entityId, uuidv7()]));
+      const rows = sources.map((row) => ({
+        ...copyOfRow(row, input.id, changeNumber, at),
+        entityId: ids.get(row.entityId)!,
+        value: withIds(row.value, ids),
+      }));
       const { unitSystem } = place.net;
       await insertNet(
         {
@@ -127,6 +130,14 @@ export function createNetService({ manager, clock, live }: NetServiceDeps) {
   };
 }
 
+/** Inserts rows of a document, as many at once as a statement takes. */
+export async function insertRows(manager: EntityManager, rows: DocumentEntityRow[]): Promise<void> {
+  for (let first = 0; first < rows.length; first += ROWS_AT_ONCE) {
+    const some = rows.slice(first, first + ROWS_AT_ONCE);
+    await manager.insert(DocumentEntityRow, some as QueryDeepPartialEntity<DocumentEntityRow>[]);
+  }
+}
+
 const startOf = (changeNumber: number, actor: Actor, at: Date) => ({
   changeNumber: String(changeNumber),
   createdBy: actor.id,
@@ -139,7 +150,6 @@ function copyOfRow(row: DocumentEntityRow, netId: string, changeNumber: number, 
     ...row,
     ownerId: netId,
     netId,
-    entityId: uuidv7(),
     version: 1,
     changeNumber: String(changeNumber),
     clientId: null,

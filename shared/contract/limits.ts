@@ -42,3 +42,6 @@ export const RENDER_MEMORY_BYTES = 1_200_000_000;
 export const THUMBNAIL_PX = 480;
 /** Pixels of the largest dark speck that can be taken out of a scan: a full stop of a 600 dpi scan has more. */
 export const MAX_SPECK_PX = 60;
+
+/** Places by which one sheet may be matched to another. */
+export const MAX_MATCHED_PLACES = 50;
