@@ -48,7 +48,7 @@ const enDeskPaletteText = {
   boundaryKinds: 'Kind of boundary',
   hints: {
     select:
-      'Click a line or a point to choose it. Drag its vertices, double-click a segment to put one in, Delete removes what is chosen.',
+      'Click a line or a point to choose it. Drag its vertices or the line itself, Shift and click chooses several, double-click a segment to put one in, Delete removes what is chosen.',
     knownPoint:
       'Click a place whose offset or elevation is printed on the drawing; it goes to the crossing of drawn lines, Alt stops that. Two set the section out, more check it.',
     equipotential:

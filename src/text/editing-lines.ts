@@ -152,6 +152,7 @@ const enEditingText = {
   duplicate: 'Duplicate',
   remove: 'Remove',
   lock: 'Lock their kinds',
+  lockedLine: 'Lines of this kind are locked: unlock the kind in the list of lines to change one.',
   form: {
     hint: 'Drag one of them to move all, or use the arrow keys: 1 px, with Shift 10 px. Shift and click adds one or leaves it out; Shift and drag on bare sheet chooses what lies inside.',
     kind: 'Kind of all lines',

@@ -1,8 +1,10 @@
 import { useState } from 'react';
+import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
 import { fixedText, plainText } from '#client/lib/figures.ts';
 import { adoptionText } from '#client/text/adoption.ts';
 import { lineText as text, waterText } from '#client/text/desk-forms.ts';
+import { editingText } from '#client/text/editing-lines.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { elevationUnit } from '#shared/text/unit-text.ts';
@@ -15,8 +17,13 @@ import { VertexTable } from './vertex-table.tsx';
 
 /** Properties of one traced line; which of them matter depends on its kind. */
 export function LineForm({ lineId, store, ...form }: DeskFormProps & { lineId: string; store: DeskStore }) {
-  const { document, reading, disabled, run, onClose } = form;
+  const { document, reading, run, onClose } = form;
   const value = document.entities[lineId]?.value;
+  const locked = useStore(
+    store,
+    ({ lockedKinds }) => value?.kind === 'line' && lockedKinds.includes(value.line),
+  );
+  const disabled = form.disabled || locked;
   if (value?.kind !== 'line') return null;
   const kind = text.kinds[value.line];
   const change = (changes: Partial<TracedLine>) =>
@@ -28,6 +35,7 @@ export function LineForm({ lineId, store, ...form }: DeskFormProps & { lineId: s
   const findings = (reading?.findings ?? []).filter((found) => found.entityIds.includes(lineId));
   return (
     <FormPane title={value.name ? `${kind} ${value.name}` : kind} onClose={onClose}>
+      {locked ? <p className="m-0 text-attention">{editingText.lockedLine}</p> : null}
       {value.finished ? null : <p className="m-0 text-attention">{text.unfinished}</p>}
       {value.origin === 'guessed' ? (
         <div>
@@ -54,7 +62,7 @@ export function LineForm({ lineId, store, ...form }: DeskFormProps & { lineId: s
         disabled={disabled}
         onCommit={(name) => change({ name })}
       />
-      <KindFields line={value} lineId={lineId} form={form} change={change} />
+      <KindFields line={value} lineId={lineId} form={{ ...form, disabled }} change={change} />
       <VertexTable store={store} lineId={lineId} line={value} disabled={disabled} />
       {disabled ? null : (
         <div className="border-t border-rule pt-3">

@@ -21,7 +21,7 @@ export function LineOperations({ store, ops = OPS }: { store: DeskStore; ops?: r
           aria-keyshortcuts={text.keys[op]}
           onClick={() => store.requestEdit(asked === op ? { type: 'leaveEdit' } : { type: 'lineOp', op })}
           className={classNames(
-            'touch flex items-baseline gap-1.5 rounded-sheet border px-2 py-[3px] text-sm hover:bg-hover',
+            'touch flex items-center gap-1.5 rounded-sheet border px-2 py-[3px] text-sm hover:bg-hover',
             asked === op ? 'border-ink bg-chosen font-semibold' : 'border-edge bg-film',
           )}
         >

@@ -29,7 +29,6 @@ export function SeveralForm({
     <FormPane title={editingText.chosen(values)} onClose={onClose} keepsFocus>
       {disabled ? null : (
         <>
-          <p className="m-0 text-sm text-ink-2 pointer-coarse:hidden">{text.hint}</p>
           {values.some((value) => value.kind === 'line') ? (
             <>
               <LineOperations store={store} ops={['join', 'reverse', 'smooth']} />
