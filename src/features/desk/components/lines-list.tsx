@@ -75,7 +75,12 @@ function Tick({ label, checked, onChange }: TickProps) {
       {checked === null ? null : (
         <label className="touch inline-flex items-center justify-center px-2 py-0.5">
           <span className="sr-only">{label}</span>
-          <input type="checkbox" checked={checked} onChange={(event) => onChange(event.target.checked)} />
+          <input
+            type="checkbox"
+            className="accent-equipotential"
+            checked={checked}
+            onChange={(event) => onChange(event.target.checked)}
+          />
         </label>
       )}
     </td>

@@ -12,7 +12,7 @@ export function helpWords(shown: HelpShown, place: readonly string[], read: Read
     ...(shown.snap === null ? [] : [text.snaps[shown.snap]]),
     ...place,
     ...headWords(shown.head, read),
-    ...shown.help.meetings.map(({ kind, angleDeg, wantsRight }) => text.angle(angleDeg, kind, wantsRight)),
+    ...angleWords(shown.help),
     ...cellWords(shown.help),
   ];
 }
@@ -28,6 +28,13 @@ export function headWords(there: HeadThere | null, { document, reading, document
     text.head(there.head.totalHead, unit),
     text.between(headOf(before), headOf(after), there.of === documentRevision),
   ];
+}
+
+/** Angles that should be right ones; only where there is none of them the nearest other. */
+function angleWords({ meetings }: LiveHelp): string[] {
+  const judged = meetings.filter(({ wantsRight }) => wantsRight);
+  const told = judged.length > 0 ? judged : meetings.slice(0, 1);
+  return told.map(({ kind, angleDeg, wantsRight }) => text.angle(angleDeg, kind, wantsRight));
 }
 
 function cellWords({ cells, wantedRatio }: LiveHelp): string[] {

@@ -32,7 +32,7 @@ export function LiveHelp({ store, views, source, touched }: LiveHelpProps) {
 }
 
 const AWAY_PX = 18;
-const WIDTH_PX = 250;
+const CHARACTER_PX = 7.3;
 const LINE_PX = 18;
 /** Under the readout of the pointer, where a finger seldom is. */
 const CORNER = { left: 12, top: 56 };
@@ -54,8 +54,9 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
   });
   const [x, y] = toScreen(view, shown.at);
   const height = words.length * LINE_PX;
+  const width = CHARACTER_PX * Math.max(...words.map((line) => line.length));
   // Beside the pointer where there is room: to its right and below, else to the other side.
-  const left = x + AWAY_PX + WIDTH_PX > view.widthPx ? x - AWAY_PX - WIDTH_PX : x + AWAY_PX;
+  const left = x + AWAY_PX + width > view.widthPx ? x - AWAY_PX - width : x + AWAY_PX;
   const top = y + AWAY_PX + height > view.heightPx ? y - AWAY_PX - height : y + AWAY_PX;
   const place = touched ? CORNER : { left: Math.max(4, left), top: Math.max(4, top) };
   return (
@@ -63,12 +64,11 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
     <div
       aria-hidden="true"
       data-live-help
-      className="pointer-events-none absolute top-0 left-0 text-sm font-semibold"
+      className="pointer-events-none absolute top-0 left-0 whitespace-nowrap bg-film/80 text-sm font-semibold"
       style={{
         ...HALO,
-        width: WIDTH_PX,
+        minWidth: width,
         transform: `translate(${Math.round(place.left)}px, ${Math.round(place.top)}px)`,
-        textAlign: !touched && left < x ? 'right' : 'left',
       }}
     >
       {words.map((line) => (
@@ -110,5 +110,6 @@ async function wordsNow(store: DeskStore, source: LiveHelpSource): Promise<strin
 
 function wordsOfPlace(at: SheetPx, document: FlowNetDocument, setOut: SetOut): string[] {
   const words = wordsAt([at[0], at[1]], document, setOut);
-  return words === null ? [] : [deskViewText.elevation(words), deskViewText.offset(words)];
+  // An em space between the two, in one line.
+  return words === null ? [] : [`${deskViewText.elevation(words)}\u2003${deskViewText.offset(words)}`];
 }

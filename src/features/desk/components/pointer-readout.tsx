@@ -21,7 +21,7 @@ export function PointerReadout({ store }: { store: DeskStore }) {
     <output
       data-over-sheet
       aria-live="off"
-      className="flex gap-4 rounded-sheet border border-rule bg-film px-2.5 py-1"
+      className="pointer-events-auto flex flex-wrap gap-x-4 rounded-sheet border border-rule bg-film px-2.5 py-1"
     >
       {words === null ? (
         <span>{text.pixels(at[0], at[1])}</span>
@@ -36,7 +36,11 @@ export function PointerReadout({ store }: { store: DeskStore }) {
 }
 
 /** Where a place of the sheet lies in the section; null before the section is set out. */
-export function wordsAt(at: SheetPoint, document: FlowNetDocument, { map, reading }: SetOut): PointerWords | null {
+export function wordsAt(
+  at: SheetPoint,
+  document: FlowNetDocument,
+  { map, reading }: SetOut,
+): PointerWords | null {
   if (map === null) return null;
   const [offset, elevation] = map.toSection(sheetPx(...at));
   const upstream = singleOf(document, 'setOut')?.value.upstream ?? null;

@@ -129,8 +129,11 @@ export function SheetView({
       </span>
       <LiveHelp store={store} views={views} source={help} touched={finger !== null} />
       <RulerAtPointer store={store} views={views} />
-      <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 [&>*]:pointer-events-auto">
-        <PointerReadout store={store} />
+      <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 md:flex-nowrap [&>*]:pointer-events-auto">
+        {/* Its room is kept while it is not there, so that the buttons stay where they are. */}
+        <div className="pointer-events-none! order-last flex min-w-32 flex-1 basis-full md:order-none md:basis-0">
+          <PointerReadout store={store} />
+        </div>
         <div className="ml-auto flex flex-wrap items-start justify-end gap-2">
           {pictureSwitch}
           <SectionViewSwitch store={store} views={views} />

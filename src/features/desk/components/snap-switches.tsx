@@ -16,6 +16,7 @@ export function SnapSwitches({ store }: { store: DeskStore }) {
         <label key={kind} className="touch flex items-center gap-2.5 py-0.5">
           <input
             type="checkbox"
+            className="accent-equipotential"
             checked={on.includes(kind)}
             onChange={(event) => change(kind, event.target.checked)}
           />

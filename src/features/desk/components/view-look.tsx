@@ -69,7 +69,12 @@ type SwitchProps = { label: string; checked: boolean; onChange(checked: boolean)
 function Switch({ label, checked, onChange }: SwitchProps) {
   return (
     <label className="touch mt-1.5 flex items-center gap-2.5">
-      <input type="checkbox" checked={checked} onChange={(event) => onChange(event.target.checked)} />
+      <input
+        type="checkbox"
+        className="accent-equipotential"
+        checked={checked}
+        onChange={(event) => onChange(event.target.checked)}
+      />
       {label}
     </label>
   );

@@ -28,13 +28,15 @@ export const LABEL_HEIGHT_PX = 17;
 const CHARACTER_PX = 6.7;
 const PADDING_PX = 10;
 const GAP_PX = 1.5;
-/** Distances from a line's end that are tried in turn: just below, then in a second row tied to it by a thin line. */
-const ROWS_PX = [16, 36];
-/** Steps to the side that are tried in each row. */
-const SHIFTS_PX = [0, 24, -24, 48, -48];
+/** Offsets of a head's label from the end of its line: just below, in a second row, and only then far to a side. */
+export const LABEL_OFFSETS: ReadonlyArray<readonly [number, number]> = [
+  ...besides([0, 24, -24], [16, 36]),
+  ...besides([48, -48], [16, 36]),
+];
 
-/** Offsets of a head's label from the end of its line. */
-export const LABEL_OFFSETS = ROWS_PX.flatMap((row) => SHIFTS_PX.map((shift) => [shift, row] as const));
+function besides(shifts: readonly number[], rows: readonly number[]): Array<readonly [number, number]> {
+  return rows.flatMap((row) => shifts.map((shift) => [shift, row] as const));
+}
 
 /** Width of a label's box. Figures are tabular, so the count of characters tells it. */
 export function labelWidthPx(text: string): number {
