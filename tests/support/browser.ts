@@ -1,7 +1,7 @@
 import { type Browser, type BrowserContextOptions, chromium, type Page } from 'playwright-core';
 import { ensureChromium } from '#server/start/chromium.mjs';
 
-const ARGS = [
+export const BROWSER_ARGS = [
   '--no-sandbox',
   '--disable-gpu',
   '--disable-quic',
@@ -28,7 +28,7 @@ export interface TestBrowser {
 
 /** Debian's Chromium, headless. `baseURL` lets pages be opened by path. */
 export async function openBrowser(baseURL: string): Promise<TestBrowser> {
-  const browser = await chromium.launch({ executablePath: await ensureChromium(), args: ARGS });
+  const browser = await chromium.launch({ executablePath: await ensureChromium(), args: BROWSER_ARGS });
   const watch = consoleWatch();
   return {
     browser,

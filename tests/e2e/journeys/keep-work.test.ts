@@ -67,6 +67,20 @@ describe('what is traced is kept', () => {
     await expect.poll(linesOnServer, { timeout: 20_000 }).toBe(3);
   });
 
+  it('with its steps: after a reload all of them are taken back at once, and done again', async () => {
+    await page.reload();
+    await page.getByRole('button', { name: 'Steps to take back' }).click();
+    const steps = page.getByRole('dialog', { name: 'Choose how far to take back' });
+    const count = await steps.getByRole('listitem').count();
+    await steps.getByRole('listitem').last().getByRole('button').click();
+    await expect.poll(linesOnServer, { timeout: 20_000 }).toBe(0);
+    await page.getByRole('button', { name: 'Steps to do again' }).click();
+    const again = page.getByRole('dialog', { name: 'Choose how far to do again' });
+    expect(await again.getByRole('listitem').count()).toBe(count);
+    await again.getByRole('listitem').last().getByRole('button').click();
+    await expect.poll(linesOnServer, { timeout: 20_000 }).toBe(3);
+  });
+
   it('through a sign-in that has ended: it goes out after signing in again', async () => {
     await page.getByRole('application', { name: / on drawing / }).waitFor();
     await world.server.db.query('DELETE FROM session');
