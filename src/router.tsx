@@ -54,6 +54,10 @@ const signedInPages: RouteObject[] = [
     async () => (await import('./pages/dam-seepage/dam-seepage-page.tsx')).DamSeepagePage,
   ),
   page('/drawings/:drawingId', async () => (await import('./pages/drawing/drawing-page.tsx')).DrawingPage),
+  page(
+    '/drawings/:drawingId/carry/:sectionId',
+    async () => (await import('./pages/carry-across/carry-page.tsx')).CarryPage,
+  ),
   page('/nets/:netId', async () => (await import('./pages/desk/desk-page.tsx')).DeskPage),
   page('/revisions/:revisionId', async () => (await import('./pages/check/check-page.tsx')).CheckPage),
   page('/revisions/:revisionId/sheet', async () => (await import('./pages/sheet/sheet-page.tsx')).SheetPage),

@@ -8,6 +8,7 @@ export const paths = {
   damSeepage: (damId: string) => `/dams/${damId}/seepage`,
   drawing: (drawingId: string, pageNumber?: number) =>
     pageNumber === undefined ? `/drawings/${drawingId}` : `/drawings/${drawingId}?sheet=${pageNumber}`,
+  carryAcross: (drawingId: string, sectionId: string) => `/drawings/${drawingId}/carry/${sectionId}`,
   net: (netId: string) => `/nets/${netId}`,
   revision: (revisionId: string) => `/revisions/${revisionId}`,
   revisionSheet: (revisionId: string) => `/revisions/${revisionId}/sheet`,

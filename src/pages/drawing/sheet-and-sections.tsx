@@ -86,6 +86,7 @@ export function SheetAndSections({ drawing, sheet, can, onCleanUp }: SheetAndSec
           <FramedSection sheet={sheet} framing={framing} onFrame={onFrame} onDone={() => setFraming(null)} />
         ) : (
           <SectionList
+            drawingId={drawing.id}
             sections={sections}
             can={can}
             showPutAway={showPutAway}
@@ -116,13 +117,14 @@ const SheetFacts = ({ sheet }: { sheet: SheetDto }) => (
 );
 
 interface SectionListProps {
+  drawingId: string;
   sections: readonly SectionDto[];
   can: readonly DamAction[];
   showPutAway: boolean;
   onEdit: (section: SectionDto) => void;
 }
 
-function SectionList({ sections, can, showPutAway, onEdit }: SectionListProps) {
+function SectionList({ drawingId, sections, can, showPutAway, onEdit }: SectionListProps) {
   if (sections.length === 0)
     return <Empty>{can.includes('section.edit') ? text.noSections : text.noSectionsReader}</Empty>;
   return (
@@ -130,6 +132,7 @@ function SectionList({ sections, can, showPutAway, onEdit }: SectionListProps) {
       {sections.map((section) => (
         <SectionItem
           key={section.id}
+          drawingId={drawingId}
           section={section}
           can={can}
           showPutAway={showPutAway}

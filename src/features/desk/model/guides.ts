@@ -49,7 +49,14 @@ export type Guides = {
 };
 
 /** Whose guides they are; each shows and takes away its own. */
-export const GUIDE_OWNERS = ['explanation', 'netCheck', 'computedNet', 'differences', 'presence'] as const;
+export const GUIDE_OWNERS = [
+  'explanation',
+  'netCheck',
+  'computedNet',
+  'differences',
+  'presence',
+  'carried',
+] as const;
 export type GuideOwner = (typeof GUIDE_OWNERS)[number];
 
 export type GuidesByOwner = Readonly<Partial<Record<GuideOwner, Guides>>>;

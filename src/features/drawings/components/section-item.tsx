@@ -1,9 +1,10 @@
 import { useState } from 'react';
 import { useNavigate } from 'react-router-dom';
-import { Button } from '#client/components/button.tsx';
+import { Button, ButtonLink } from '#client/components/button.tsx';
 import { useNotice } from '#client/components/notice.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { paths } from '#client/lib/paths.ts';
+import { carryAcrossText } from '#client/text/carry-across.ts';
 import { drawingsText as text } from '#client/text/drawings.ts';
 import { netFileText } from '#client/text/net-files.ts';
 import type { DamAction } from '#shared/contract/actions.ts';
@@ -15,6 +16,7 @@ import { NetFileDialog } from './net-file-dialog.tsx';
 import { NetItem } from './net-item.tsx';
 
 interface SectionItemProps {
+  drawingId: string;
   section: SectionDto;
   can: readonly DamAction[];
   showPutAway: boolean;
@@ -22,7 +24,7 @@ interface SectionItemProps {
 }
 
 /** One section: where it is cut, whether it is to scale, and its nets. */
-export function SectionItem({ section, can, showPutAway, onEdit }: SectionItemProps) {
+export function SectionItem({ drawingId, section, can, showPutAway, onEdit }: SectionItemProps) {
   const label = sectionLabel(section);
   const isAway = section.archivedAt !== null;
   const nets = section.nets.filter((net) => showPutAway || net.archivedAt === null);
@@ -46,17 +48,19 @@ export function SectionItem({ section, can, showPutAway, onEdit }: SectionItemPr
         </ul>
       ) : null}
       {can.includes('section.edit') ? (
-        <SectionActions section={section} label={label} onEdit={onEdit} />
+        <SectionActions drawingId={drawingId} section={section} label={label} onEdit={onEdit} />
       ) : null}
     </li>
   );
 }
 
 function SectionActions({
+  drawingId,
   section,
   label,
   onEdit,
 }: {
+  drawingId: string;
   section: SectionDto;
   label: string;
   onEdit: () => void;
@@ -84,6 +88,13 @@ function SectionActions({
             <Button look="quiet" aria-label={text.editSectionOf(label)} onClick={onEdit}>
               {text.editSection}
             </Button>
+            <ButtonLink
+              look="quiet"
+              aria-label={carryAcrossText.buttonOf(label)}
+              to={paths.carryAcross(drawingId, section.id)}
+            >
+              {carryAcrossText.button}
+            </ButtonLink>
           </>
         )}
         <Button
