@@ -16,13 +16,15 @@ export interface ApiClient {
   cookie: string;
   get<T>(path: string): Promise<T>;
   getBytes(path: string): Promise<ArrayBuffer>;
+  /** The answer while it still comes, as a stream of events does. */
+  open(path: string, signal: AbortSignal): Promise<Response>;
   post<T>(path: string, body: object | FormData): Promise<T>;
 }
 
 export async function signInAtDam(stand: BenchStand): Promise<ApiClient> {
   const people = await makePeople(stand);
   let [cookie, csrfToken] = ['', ''];
-  const call = async (method: string, path: string, body?: object | FormData) => {
+  const call = async (method: string, path: string, body?: object | FormData, signal?: AbortSignal) => {
     const isForm = body instanceof FormData;
     const response = await fetch(`${stand.address}/api/v1${path}`, {
       method,
@@ -32,6 +34,7 @@ export async function signInAtDam(stand: BenchStand): Promise<ApiClient> {
         ...(isForm ? {} : { 'Content-Type': 'application/json' }),
       },
       ...(body ? { body: isForm ? body : JSON.stringify(body) } : {}),
+      ...(signal ? { signal } : {}),
     });
     const set = response.headers.getSetCookie()[0];
     if (set) cookie = set.split(';')[0] ?? cookie;
@@ -51,6 +54,7 @@ export async function signInAtDam(stand: BenchStand): Promise<ApiClient> {
     cookie,
     get: async <T>(path: string) => (await (await call('GET', path)).json()) as T,
     getBytes: async (path) => (await call('GET', path)).arrayBuffer(),
+    open: (path, signal) => call('GET', path, undefined, signal),
     post: async <T>(path: string, body: object | FormData) =>
       (await (await call('POST', path, body)).json()) as T,
   };

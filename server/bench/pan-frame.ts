@@ -93,7 +93,7 @@ async function panning(browser: Browser, page: Page): Promise<number> {
 
 async function openDesk(browser: Browser, stand: BenchStand): Promise<Page> {
   const client = await signInAtDam(stand);
-  const sheet = await uploadSheet(client, await a1GroupFour(0), 'a1.tif');
+  const sheet = await uploadSheet(client, await a1GroupFour(), 'a1.tif');
   const { netId } = await traceBenchNet(client, sheet.id);
   const context = await browser.newContext({ viewport: VIEW });
   const [name = '', value = ''] = client.cookie.split('=', 2);

@@ -1,4 +1,4 @@
-import { readdirSync, readFileSync } from 'node:fs';
+import { readFileSync } from 'node:fs';
 
 const POLL_MS = 50;
 
@@ -7,29 +7,26 @@ type Counted = 'whole' | 'children';
 
 /** Resident bytes of a process and all that it started. Linux only; 0 elsewhere. */
 function residentBytesOfTree(root: number, counted: Counted): number {
-  const processes = readProcesses();
-  const family = new Set([root]);
-  // A child's number may be lower than its parent's, so one pass in the order of numbers is not enough.
-  for (let before = 0; before < family.size; ) {
-    before = family.size;
-    for (const each of processes) if (family.has(each.parent)) family.add(each.pid);
-  }
-  if (counted === 'children') family.delete(root);
-  return processes.reduce((sum, each) => sum + (family.has(each.pid) ? each.bytes : 0), 0);
+  const own = counted === 'whole' ? residentBytes(root) : 0;
+  return childrenOf(root).reduce((sum, child) => sum + residentBytesOfTree(child, 'whole'), own);
 }
 
-function readProcesses(): Array<{ pid: number; parent: number; bytes: number }> {
-  const names = process.platform === 'linux' ? readdirSync('/proc').filter((name) => /^\d+$/.test(name)) : [];
-  return names.flatMap((name) => {
-    try {
-      const status = readFileSync(`/proc/${name}/status`, 'utf8');
-      const field = (key: string) => Number(new RegExp(`^${key}:\\s+(\\d+)`, 'm').exec(status)?.[1] ?? 0);
-      return [{ pid: Number(name), parent: field('PPid'), bytes: field('VmRSS') * 1024 }];
-    } catch {
-      // It ended between the listing and the reading.
-      return [];
-    }
-  });
+/** Asked of the kernel by process: going through all processes of the machine would slow what is measured. */
+function childrenOf(pid: number): number[] {
+  return read(`/proc/${pid}/task/${pid}/children`).split(' ').filter(Boolean).map(Number);
+}
+
+function residentBytes(pid: number): number {
+  return Number(/^VmRSS:\s+(\d+)/m.exec(read(`/proc/${pid}/status`))?.[1] ?? 0) * 1024;
+}
+
+/** Empty when the process has ended meanwhile. */
+function read(file: string): string {
+  try {
+    return readFileSync(file, 'utf8');
+  } catch {
+    return '';
+  }
 }
 
 /** Runs `work` and tells the highest sum of resident memory seen meanwhile, in bytes. */

@@ -2,19 +2,25 @@ import { writeFileSync } from 'node:fs';
 import { parseArgs } from 'node:util';
 import type { Bench, BenchRow } from './bench.ts';
 import { firstLoad } from './first-load.ts';
+import { firstView } from './first-view-bench.ts';
 import { independentSolution } from './independent-bench.ts';
 import { inkFollow } from './ink-follow.ts';
 import { panFrame } from './pan-frame.ts';
 import { fieldSolve, readingError, reread200, wholeNet60 } from './reading-bench.ts';
+import { renderMemory } from './render-memory.ts';
 import { scheduleApi } from './schedule-api.ts';
 import { sheetPdf } from './sheet-pdf.ts';
 import { tableOf } from './table.ts';
-import { uploadGroupFour, uploadJpeg } from './upload-a1.ts';
+import { uploadGroupFour, uploadGroupFourE, uploadJpeg, uploadPdf } from './upload-bench.ts';
 
 /** npm run bench [-- --only NAME --json FILE] */
 const benches: readonly Bench[] = [
   uploadGroupFour,
   uploadJpeg,
+  uploadGroupFourE,
+  uploadPdf,
+  firstView,
+  renderMemory,
   panFrame,
   firstLoad,
   scheduleApi,

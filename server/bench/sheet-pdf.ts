@@ -64,7 +64,7 @@ async function tiledA1(
   folder: string,
 ): Promise<{ storage: StoragePort; sheet: Parameters<typeof scanPicture>[1] }> {
   const file = path.join(folder, 'a1.jpg');
-  writeFileSync(file, await a1Jpeg(0));
+  writeFileSync(file, await a1Jpeg());
   const renderer = createRenderProcess();
   try {
     const outFolder = path.join(folder, 'tiles');

@@ -1,27 +1,82 @@
 import type { DrawingDto, SheetDto } from '#shared/contract/drawings.ts';
 import type { ApiClient } from './api-client.ts';
 
-const POLL_MS = 50;
-const PATIENCE_MS = 120_000;
+const PATIENCE_MS = 10 * 60_000;
+/** Asked for anyway, in case an announcement was missed. */
+const AT_LEAST_MS = 1000;
+/** Levels of a first view that fill a desk's window: 1,025 to 2,048 pixels on the longer side. */
+const DESK_ZOOM = 2;
 
-/** Uploads a file and waits until its first page can be seen. */
+/** Uploads a file and waits until its first page is there whole and its finest tile has been received. */
 export async function uploadSheet(client: ApiClient, file: Buffer, name: string): Promise<SheetDto> {
-  const form = new FormData();
-  form.append('file', new Blob([new Uint8Array(file)]), name);
-  const drawing = await client.post<DrawingDto>(`/dams/${client.damId}/drawings`, form);
-  const sheet = await firstSheet(client, drawing.id);
-  await client.getBytes(`/sheets/${sheet.id}/tiles/${sheet.tiles.rendition}/0/0_0`);
+  const sheet = await uploaded(client, file, name, (each) => each.tiles.readyZoom === undefined);
+  await client.getBytes(tilePath(sheet, sheet.tiles.maxZoom, '0_0'));
   return sheet;
 }
 
-async function firstSheet(client: ApiClient, drawingId: string): Promise<SheetDto> {
-  const deadline = performance.now() + PATIENCE_MS;
-  while (performance.now() < deadline) {
-    const drawing = await client.get<DrawingDto>(`/drawings/${drawingId}`);
-    if (drawing.job.state === 'refused' || drawing.job.state === 'failed')
-      throw new Error(drawing.job.message);
-    if (drawing.job.state === 'done' && drawing.sheets[0]) return drawing.sheets[0];
-    await new Promise((resolve) => setTimeout(resolve, POLL_MS));
+/** Uploads a file and waits until a desk's window can be filled with its first page, whole or not. */
+export async function uploadToFirstView(client: ApiClient, file: Buffer, name: string): Promise<SheetDto> {
+  const sheet = await uploaded(client, file, name, () => true);
+  const { tileSizePx, maxZoom } = sheet.tiles;
+  const zoom = Math.min(DESK_ZOOM, maxZoom);
+  const tilesAlong = (lengthPx: number) => Math.ceil(lengthPx / 2 ** (maxZoom - zoom) / tileSizePx);
+  const wanted: Promise<unknown>[] = [];
+  for (let x = 0; x < tilesAlong(sheet.widthPx); x++)
+    for (let y = 0; y < tilesAlong(sheet.heightPx); y++)
+      wanted.push(client.getBytes(tilePath(sheet, zoom, `${x}_${y}`)));
+  await Promise.all(wanted);
+  return sheet;
+}
+
+const tilePath = (sheet: SheetDto, zoom: number, tile: string) =>
+  `/sheets/${sheet.id}/tiles/${sheet.tiles.rendition}/${zoom}/${tile}`;
+
+/** Hears of the drawing as a browser does, by the stream of events, and looks again at each. */
+async function uploaded(
+  client: ApiClient,
+  file: Buffer,
+  name: string,
+  isThere: (sheet: SheetDto) => boolean,
+): Promise<SheetDto> {
+  const ending = new AbortController();
+  const ear = await openEar(client, ending.signal);
+  try {
+    const form = new FormData();
+    form.append('file', new Blob([new Uint8Array(file)]), name);
+    const { id } = await client.post<DrawingDto>(`/dams/${client.damId}/drawings`, form);
+    for (const began = performance.now(); performance.now() - began < PATIENCE_MS; ) {
+      const news = ear.next();
+      const drawing = await client.get<DrawingDto>(`/drawings/${id}`);
+      if (drawing.job.state === 'refused' || drawing.job.state === 'failed')
+        throw new Error(drawing.job.message);
+      if (drawing.sheets[0] && isThere(drawing.sheets[0])) return drawing.sheets[0];
+      await news;
+    }
+    throw new Error('The drawing was not ready within ten minutes.');
+  } finally {
+    ending.abort();
   }
-  throw new Error('The drawing was not ready within two minutes.');
+}
+
+/** `next` resolves with the first event after it was asked for. */
+async function openEar(client: ApiClient, signal: AbortSignal): Promise<{ next(): Promise<void> }> {
+  const waiting = new Set<() => void>();
+  const { body } = await client.open('/live', signal);
+  const listen = async () => {
+    for await (const _ of body ?? []) {
+      for (const wake of waiting) wake();
+      waiting.clear();
+    }
+  };
+  listen().catch(() => undefined);
+  return {
+    next: () =>
+      new Promise((resolve) => {
+        const timer = setTimeout(resolve, AT_LEAST_MS);
+        waiting.add(() => {
+          clearTimeout(timer);
+          resolve();
+        });
+      }),
+  };
 }
