@@ -17,7 +17,8 @@ export type SetOut = {
   map: SectionMap | null;
   /** kh/kv that unequal scales imply where the section is drawn transformed; null elsewhere. */
   impliedRatio: number | null;
-  /** How the fit was come by; null while there is none. */
+  /** What was fitted and how it was come by; null while there is none. */
+  fit: FittedSection | null;
   grounds: FitGrounds | null;
   findings: Finding[];
 };
@@ -82,6 +83,7 @@ function withoutMap(state: SetOutReading['state'], finding: Finding): SetOut {
     reading: { ...NOTHING, state },
     map: null,
     impliedRatio: null,
+    fit: null,
     grounds: null,
     findings: [finding],
   };
@@ -123,6 +125,7 @@ function withMap(
       placeDoubt: null,
     },
     map: fit.map,
+    fit,
     grounds,
     impliedRatio: setOut.scales === 'transformedSection' ? (fit.along / fit.up) ** 2 : null,
     findings: setOutFindings(document, setOut, fit, { grounds, residual, impliedScale }),

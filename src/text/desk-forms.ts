@@ -14,10 +14,13 @@ export const formText = inLanguage({ en: enFormText });
 
 const enSetOutText = {
   title: 'Known points',
-  lead: 'Mark two points whose offset and elevation you know, as far apart as you can. Further points check the fit.',
+  lead: 'Mark two points whose offset and elevation you know, as far apart as you can, or more of which you know one of the two. Further points check the fit.',
   place: 'Place known points',
   method: 'What is known',
-  methods: { points: 'Two or more points', distance: 'A distance and one elevation' },
+  methods: {
+    points: 'Offsets and elevations of points',
+    distance: 'A length, as of a scale bar, and one elevation',
+  },
   none: 'No known points yet.',
   name: 'Name',
   unnamed: 'known point',
@@ -27,7 +30,7 @@ const enSetOutText = {
   uses: { fit: 'sets the scale', check: 'check only' },
   residual: (offset: string, elevation: string, unit: string) =>
     `off by ${offset} ${unit} in offset, ${elevation} ${unit} in elevation`,
-  distance: (unit: string) => `Distance between the first two points, ${unit}`,
+  distance: (unit: string) => `Known length, ${unit}`,
   distanceHint: 'Give one of the points its elevation and one its offset.',
   level: 'What is level',
   levels: { line: 'the line through the two points', sheet: 'the edge of the sheet' },
@@ -50,6 +53,8 @@ const enSetOutText = {
     equal: 'one scale for both directions',
     plottingExaggeration: 'stretched for plotting only',
     transformedSection: 'drawn transformed for its anisotropy',
+    stretchedPaper: 'one scale, on paper that has stretched',
+    perspective: 'one scale, photographed at a slant',
   },
   scalesHint: {
     equal: 'Say so when heights are drawn to another scale than lengths.',
@@ -57,6 +62,9 @@ const enSetOutText = {
       'The net was drawn for the ground as it is, and the picture was stretched afterwards.',
     transformedSection:
       'The net was drawn in squares on the transformed section: kh/kv is the square of the ratio of the two scales.',
+    stretchedPaper: 'Three known points or more, off one line; a fourth checks them.',
+    perspective:
+      'Four known points or more, no three on one line, best near the corners; a fifth checks them.',
   },
   result: 'Fit',
   scale: (scale: string) => `Scale ${scale}`,

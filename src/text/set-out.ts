@@ -33,6 +33,7 @@ const enPlacing = {
   usesOfLength: { fit: 'end of the length', check: 'gives the level or the offset' },
   turnFromSheet:
     'The points do not tell how the sheet is turned: its own edge is taken for level, and what that is off is not in the ±.',
+  levelsOfPoints: { line: 'as the points say', sheet: 'the edge of the sheet' },
   twoScales: (along: string, up: string, times: string) =>
     `Scale ${along} along, ${up} upwards: stretched ${times} times`,
   doubtTitle: 'What the known points leave to a place, ± (95 %)',

@@ -34,6 +34,8 @@ const en = {
   knownPointsNeeded: 'Known points needed',
   upUnclear: 'Which way is up?',
   residualNone: 'None, two points only',
+  placeDoubt: (middle: string, corner: string, unit: string) =>
+    `; places ± ${middle}${middle === corner ? '' : ` to ${corner}`} ${unit}`,
   residualLater: 'Not to scale yet',
   levelNeeded: 'Level needed',
   outletNeeded: 'Outlet needed',

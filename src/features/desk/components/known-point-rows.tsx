@@ -1,20 +1,26 @@
 import { useEffect, useRef } from 'react';
-import { signedText } from '#client/lib/figures.ts';
 import { formText, setOutText as text } from '#client/text/desk-forms.ts';
+import { placingText as placing } from '#client/text/set-out.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
-import type { NetReading } from '#shared/contract/reading.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure, Words } from './form-fields.tsx';
+import { GivenByPoint, PlaceOnSheet, Residual } from './known-point-facts.tsx';
 
 type KnownPoint = { id: string; value: EntityOf<'knownPoint'> };
+
+type RowsProps = DeskFormProps & {
+  method: EntityOf<'setOut'>['method'];
+  /** The two points between which a scale bar lies that checks the fit; empty without one. */
+  barEnds: readonly string[];
+};
 
 /** One block for each known point: what is typed for it, what it is used for, and how far off the fit passes it. */
 export function KnownPointRows({
   points,
   placedId,
   ...form
-}: DeskFormProps & {
+}: RowsProps & {
   points: readonly KnownPoint[];
   /** The point just placed: what is typed next is its offset. */
   placedId: string | null;
@@ -36,11 +42,20 @@ export function KnownPointRows({
   );
 }
 
-function KnownPointRow({ point, document, reading, disabled, run }: DeskFormProps & { point: KnownPoint }) {
+function KnownPointRow({
+  point,
+  document,
+  reading,
+  disabled,
+  run,
+  method,
+  barEnds,
+}: RowsProps & { point: KnownPoint }) {
   const { id, value } = point;
   const name = value.name || text.unnamed;
-  const change = (changes: Partial<EntityOf<'knownPoint'>>) =>
-    run(text.labels.point(name), [{ op: 'put', entityId: id, value: { ...value, ...changes } }]);
+  const unit = unitNames(document.unitSystem).length;
+  const change = (changes: Partial<EntityOf<'knownPoint'>>, label: string = text.labels.point(name)) =>
+    run(label, [{ op: 'put', entityId: id, value: { ...value, ...changes } }]);
   return (
     <fieldset className="m-0 border-0 p-0">
       <legend className="sr-only">{name}</legend>
@@ -54,7 +69,7 @@ function KnownPointRow({ point, document, reading, disabled, run }: DeskFormProp
         />
         <div data-offset-of={id}>
           <Figure
-            label={text.offset(unitNames(document.unitSystem).length)}
+            label={text.offset(unit)}
             value={value.offset}
             optional
             disabled={disabled}
@@ -73,7 +88,7 @@ function KnownPointRow({ point, document, reading, disabled, run }: DeskFormProp
         <Choice
           label={text.use}
           value={value.use}
-          names={text.uses}
+          names={method === 'distance' ? placing.usesOfLength : text.uses}
           disabled={disabled}
           onCommit={(use) => change({ use })}
         />
@@ -88,18 +103,13 @@ function KnownPointRow({ point, document, reading, disabled, run }: DeskFormProp
           </button>
         )}
       </div>
-      <Residual id={id} reading={reading} unit={unitNames(document.unitSystem).length} />
+      <GivenByPoint value={value} method={method} isBarEnd={barEnds.includes(id)} />
+      <Residual id={id} reading={reading} unit={unit} />
+      <PlaceOnSheet
+        at={value.at}
+        disabled={disabled}
+        onCommit={(at) => change({ at }, placing.movedPlace(name))}
+      />
     </fieldset>
-  );
-}
-
-/** With two points there is none: the fit passes through both, whatever was typed. */
-function Residual({ id, reading, unit }: { id: string; reading: NetReading | null; unit: string }) {
-  const residual = reading?.setOut.residuals.find((each) => each.id === id);
-  if (!residual || reading?.setOut.residual === null) return null;
-  return (
-    <p className="m-0 mt-1 text-sm text-ink-2">
-      {text.residual(signedText(residual.offset, 3), signedText(residual.elevation, 3), unit)}
-    </p>
   );
 }

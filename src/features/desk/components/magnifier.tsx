@@ -1,6 +1,7 @@
 import { useEffect, useRef } from 'react';
 import { useStore } from 'zustand';
 import { deskViewText as text } from '#client/text/desk-view.ts';
+import { placingText } from '#client/text/set-out.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import type { SheetRaster } from '../model/sheet-raster.ts';
@@ -72,6 +73,12 @@ export function Magnifier({ store, renderer, follow }: MagnifierProps) {
       <span className="pointer-events-none absolute bottom-0.5 left-1 bg-film px-1 text-xs text-ink-2">
         {text.magnified}
       </span>
+      <output
+        aria-live="off"
+        className="pointer-events-none absolute top-0.5 left-1 bg-film px-1 text-xs text-ink-2 tabular-nums"
+      >
+        {placingText.place(centre[0], centre[1])}
+      </output>
     </fieldset>
   );
 }

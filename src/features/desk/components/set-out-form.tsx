@@ -1,13 +1,20 @@
+import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
-import { fixedText, plainText, signedText } from '#client/lib/figures.ts';
+import { plainText, signedText } from '#client/lib/figures.ts';
 import { setOutText as text } from '#client/text/desk-forms.ts';
+import { placingText as placing } from '#client/text/set-out.ts';
+import { readSetOut } from '#shared/compute/set-out.ts';
+import { lengthEnds } from '#shared/compute/set-out-distance.ts';
+import { scaleBarOf } from '#shared/compute/set-out-findings.ts';
 import { type EntityOf, entitiesOf, singleOf } from '#shared/contract/document.ts';
-import type { SetOutReading } from '#shared/contract/reading.ts';
+import type { NetReading, SetOutReading } from '#shared/contract/reading.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
+import { changeSettingOutAids, settingOutAids } from '../model/setting-out-aids.ts';
 import type { DeskFormProps } from './desk-form.ts';
 import { Choice, Figure } from './form-fields.tsx';
 import { FormFindings, FormPane, findingsFor } from './form-pane.tsx';
 import { KnownPointRows } from './known-point-rows.tsx';
+import { SetOutFit } from './set-out-fit.tsx';
 
 type SetOut = EntityOf<'setOut'>;
 
@@ -34,6 +41,7 @@ export function SetOutForm({
       {disabled ? null : (
         <div>
           <Button onClick={onPlace}>{text.place}</Button>
+          <TakesCrossings />
         </div>
       )}
       <Choice
@@ -43,9 +51,26 @@ export function SetOutForm({
         disabled={disabled}
         onCommit={(method) => change({ method }, text.labels.method)}
       />
-      <KnownPointRows points={points} placedId={placedId} {...form} />
+      <KnownPointRows
+        points={points}
+        placedId={placedId}
+        method={held.value.method}
+        barEnds={held.value.method === 'points' && held.value.distance !== null ? blankPair(points) : []}
+        {...form}
+      />
       {held.value.method === 'distance' ? (
         <DistanceFields {...form} setOut={held.value} change={change} />
+      ) : (
+        <ScaleBar {...form} setOut={held.value} points={points} change={change} />
+      )}
+      {asksLevel(held.value, reading) ? (
+        <Choice
+          label={text.level}
+          value={held.value.level}
+          names={placing.levelsOfPoints}
+          disabled={disabled}
+          onCommit={(level) => change({ level })}
+        />
       ) : null}
       <Sides setOut={held.value} reading={reading?.setOut ?? null} disabled={disabled} change={change} />
       <Figure
@@ -65,14 +90,26 @@ export function SetOutForm({
         disabled={disabled}
         onCommit={(scales) => change({ scales })}
       />
-      {reading?.setOut.state === 'fitted' ? (
-        <Fit
-          setOut={reading.setOut}
-          stated={held.value.statedScale !== null}
-          unit={unitNames(document.unitSystem).length}
-        />
-      ) : null}
+      {reading?.setOut.state === 'fitted' ? <SetOutFit document={document} setOut={reading.setOut} /> : null}
     </FormPane>
+  );
+}
+
+function TakesCrossings() {
+  const on = useStore(settingOutAids, (state) => state.takesCrossings);
+  return (
+    <label className="mt-2 flex items-start gap-2">
+      <input
+        type="checkbox"
+        className="mt-1"
+        checked={on}
+        onChange={(event) => changeSettingOutAids({ takesCrossings: event.target.checked })}
+      />
+      <span>
+        {placing.takesCrossings}
+        <span className="block text-sm text-ink-2">{placing.takesCrossingsHint}</span>
+      </span>
+    </label>
   );
 }
 
@@ -82,12 +119,16 @@ interface PartProps {
   change: (changes: Partial<SetOut>) => void;
 }
 
-function DistanceFields({ document, setOut, disabled, change }: PartProps & Pick<DeskFormProps, 'document'>) {
+type PointsProps = PartProps & Pick<DeskFormProps, 'document'>;
+
+function DistanceFields({ document, setOut, disabled, change }: PointsProps) {
+  const unit = unitNames(document.unitSystem).length;
+  const ends = lengthEnds(entitiesOf(document, 'knownPoint'));
   return (
     <>
       <Figure
-        label={text.distance(unitNames(document.unitSystem).length)}
-        hint={text.distanceHint}
+        label={ends === null ? text.distance(unit) : placing.endsOf(nameOf(ends[0]), nameOf(ends[1]), unit)}
+        hint={ends === null ? placing.endsUnmarked : text.distanceHint}
         value={setOut.distance}
         optional
         positive
@@ -103,6 +144,54 @@ function DistanceFields({ document, setOut, disabled, change }: PartProps & Pick
       />
     </>
   );
+}
+
+type KnownPoint = { id: string; value: EntityOf<'knownPoint'> };
+const nameOf = ({ value }: KnownPoint) => value.name || text.unnamed;
+
+/** Two points that give neither offset nor elevation may be the ends of a scale bar. */
+function blankPair(points: readonly KnownPoint[]): string[] {
+  const blank = points.filter(({ value }) => value.offset === null && value.elevation === null);
+  return blank.length < 2 ? [] : blank.slice(0, 2).map(({ id }) => id);
+}
+
+/** A scale bar beside known points checks the fit; it is offered once two points could be its ends. */
+function ScaleBar({
+  document,
+  setOut,
+  disabled,
+  change,
+  points,
+}: PointsProps & { points: readonly KnownPoint[] }) {
+  const [from, to] = blankPair(points).map((id) => points.find((point) => point.id === id));
+  if (from === undefined || to === undefined) return null;
+  const { map } = readSetOut(document);
+  const bar = map === null ? null : scaleBarOf(document, setOut, map);
+  const unit = unitNames(document.unitSystem).length;
+  return (
+    <Figure
+      label={placing.scaleBar(unit)}
+      hint={
+        bar === null
+          ? placing.scaleBarHint(nameOf(from), nameOf(to))
+          : placing.scaleBarFits(
+              `${plainText(bar.fitted, 5)} ${unit}`,
+              signedText(100 * (bar.fitted / bar.stated - 1), 2),
+            )
+      }
+      value={setOut.distance}
+      optional
+      positive
+      disabled={disabled}
+      onCommit={(distance) => change({ distance })}
+    />
+  );
+}
+
+/** Asked when the points leave the turn of the sheet open, and shown as long as it is answered. */
+function asksLevel({ method, level }: SetOut, reading: NetReading | null): boolean {
+  if (method !== 'points') return false;
+  return level === 'sheet' || (reading?.findings.some(({ code }) => code === 'turnUnknown') ?? false);
 }
 
 const TURNS = { '': null, 0: 0, 1: 1, 2: 2, 3: 3 } as const;
@@ -141,26 +230,4 @@ function Sides({ setOut, reading, disabled, change }: PartProps & { reading: Set
 
 function turnName(turns: SetOut['upQuarterTurns']): '' | '0' | '1' | '2' | '3' {
   return turns === null ? '' : (`${turns}` as const);
-}
-
-function Fit({ setOut, stated, unit }: { setOut: SetOutReading; stated: boolean; unit: string }) {
-  const implied = setOut.impliedScale === null ? '' : `, ${text.implied(plainText(setOut.impliedScale, 3))}`;
-  return (
-    <section className="border-t border-rule pt-2">
-      <h3 className="m-0 text-sm font-semibold">{text.result}</h3>
-      <p className="m-0">
-        {text.scale(`${plainText(setOut.unitsPerPx, 4)} ${unit}/px`)}
-        {implied}.
-      </p>
-      {stated && setOut.impliedScale === null ? (
-        <p className="m-0 text-attention">{text.noResolution}</p>
-      ) : null}
-      <p className="m-0">{text.rotation(signedText(setOut.rotationDeg, 2))}.</p>
-      <p className="m-0">
-        {setOut.residual === null
-          ? text.residualNone
-          : `${text.residualAll(`${fixedText(setOut.residual, 3)} ${unit}`)}.`}
-      </p>
-    </section>
-  );
 }

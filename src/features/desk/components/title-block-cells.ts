@@ -106,8 +106,18 @@ function residualOf(document: FlowNetDocument, reading: NetReading | null): Told
   if (!reading) return { label, value: WAITING };
   if (reading.setOut.state !== 'fitted') return { label, value: [text.residualLater], state: 'missing' };
   const { residual } = reading.setOut;
-  if (residual === null) return { label, value: [text.residualNone], state: 'question' };
-  return { label, value: [`${fixedText(residual, 3)} ${lengthUnit(document)}`] };
+  const doubt = placeDoubtWords(document, reading);
+  if (residual === null) return { label, value: [`${text.residualNone}${doubt}`], state: 'question' };
+  return { label, value: [`${fixedText(residual, 3)} ${lengthUnit(document)}${doubt}`] };
+}
+
+/** What the known points leave to a place, in the middle and at the worst corner: both coordinates in one length. */
+function placeDoubtWords({ unitSystem }: FlowNetDocument, { setOut: { placeDoubt } }: NetReading): string {
+  if (placeDoubt === null) return '';
+  const [middle, corner] = [placeDoubt.middle, placeDoubt.corner].map(({ offset, elevation }) =>
+    plainText(Math.hypot(offset, elevation), 2),
+  );
+  return text.placeDoubt(middle!, corner!, unitNames(unitSystem).length);
 }
 
 function headwaterOf(document: FlowNetDocument): Told {
