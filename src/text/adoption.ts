@@ -18,8 +18,10 @@ const en = {
     count === 1
       ? `Adopt in place of the traced ${KINDS[kind][0]}`
       : `Adopt in place of the ${count} traced ${KINDS[kind][1]}`,
-  doubles: (kind: AdoptableKind, count: number) =>
-    `${count} traced ${KINDS[kind][count === 1 ? 0 : 1]} would stand beside the adopted: two lines of one head cannot be counted.`,
+  beside: (kind: AdoptableKind, count: number) =>
+    kind === 'flowLine'
+      ? `Beside ${count} traced ${KINDS[kind][count === 1 ? 0 : 1]} the adopted ones would make channels of their own.`
+      : `Beside ${count} traced ${KINDS[kind][count === 1 ? 0 : 1]} the adopted ones would be counted twice.`,
   one: (label: string) => `Adopt ${label}`,
   adopt: 'Adopt',
   isAdopted: 'adopted',

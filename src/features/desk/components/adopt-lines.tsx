@@ -73,17 +73,15 @@ function AdoptKind({
   const done = lines.every((line) => isAdopted(document, line));
   return (
     <div className="flex flex-col items-start gap-1">
+      {own > 0 ? (
+        <Button look="quiet" disabled={!current} onClick={() => adoptLines(store, lines, kind)}>
+          {text.inPlace(kind, own)}
+        </Button>
+      ) : null}
       <Button look="quiet" disabled={done || !current} onClick={() => adoptLines(store, lines)}>
         {text.all(kind, lines.length)}
       </Button>
-      {own > 0 ? (
-        <>
-          <Button look="quiet" disabled={!current} onClick={() => adoptLines(store, lines, kind)}>
-            {text.inPlace(kind, own)}
-          </Button>
-          <Aside>{text.doubles(kind, own)}</Aside>
-        </>
-      ) : null}
+      {own > 0 ? <Aside>{text.beside(kind, own)}</Aside> : null}
     </div>
   );
 }

@@ -39,7 +39,7 @@ function hintOf(state: DeskState, clicked: ClickedPlaces, way: DrawingWay): stri
   if (drawn?.kind === 'profile' && drawn.place.on === 'sheet') {
     return `${text.tracing(profileText.drawn, drawn.place.points.length)}\n${text.tracingKeys}`;
   }
-  if (lineChoiceOf(state.tool, state.boundaryKind) !== null && way !== 'straight') {
+  if (lineChoiceOf(state.tool, state.boundaryKind) !== null) {
     return `${text.hints[state.tool]}\n${drawingWayText.hints[way]}`;
   }
   if (state.pendingEdit !== null) return `${editingText.asks[state.pendingEdit.op]}\n${editingText.leaveKey}`;
