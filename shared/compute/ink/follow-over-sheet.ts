@@ -79,10 +79,21 @@ export function createInkFollower(sheet: InkSheet): {
     };
   }
 
+  /** Over the finest level that is fit and there: while a sheet is being prepared its finer tiles are not. */
+  async function firstLook(from: Place, to: Place, grip: number) {
+    for (let level = levelFor(sheet, from, to); ; level += 1) {
+      const found = within(level, [from, to], roomFor(from, to), [from, to], grip);
+      const look = await found.catch((error: unknown) => {
+        if (level >= sheet.halvings) throw error;
+        return null;
+      });
+      if (look !== null) return { level, ...look };
+    }
+  }
+
   return {
     async follow({ from, to, grip, fine }) {
-      const level = levelFor(sheet, from, to);
-      const first = await within(level, [from, to], roomFor(from, to), [from, to], grip);
+      const { level, ...first } = await firstLook(from, to, grip);
       if (first.onInk < LEAST_ON_INK) return { points: [from, to], found: false };
       if (level === 0 || !fine) return { points: first.points, found: true };
       const points: Place[] = [];
@@ -90,7 +101,9 @@ export function createInkFollower(sheet: InkSheet): {
         const start = points.at(-1) ?? piece[0]!;
         // Where the smaller level put a place it may be off by a few of its own pixels.
         const reach = points.length === 0 ? Math.max(grip, 2 ** level) : 2 ** (level + 1);
-        const found = await within(0, piece, 8 + 6 * 2 ** level, [start, piece.at(-1)!], reach);
+        const room = 8 + 6 * 2 ** level;
+        const found = await within(0, piece, room, [start, piece.at(-1)!], reach).catch(() => null);
+        if (found === null) return { points: first.points, found: true };
         points.push(...(points.length === 0 ? found.points : found.points.slice(1)));
       }
       return { points: thinned(points as [number, number][], 0.3), found: true };

@@ -23,24 +23,31 @@ const INVERTED = 1.5;
  */
 export function inkMapOf({ width, height, grey }: InkWindow): InkMap {
   const smooth = smoothed(darkOnLight(grey), width, height);
-  const sums = integralOf(smooth, width, height);
   const shortfall = new Uint8Array(width * height);
   const tally = new Uint32Array(256);
+  // Sums of the columns over the rows about the one in hand; the square's sum slides along them.
+  const columns = new Int32Array(width);
+  let [from, to] = [0, 0];
   for (let y = 0; y < height; y += 1) {
-    const y0 = Math.max(0, y - PAPER_RADIUS);
-    const y1 = Math.min(height, y + PAPER_RADIUS + 1);
+    for (; to < Math.min(height, y + PAPER_RADIUS + 1); to += 1) addRow(columns, smooth, to * width, 1);
+    for (; from < y - PAPER_RADIUS; from += 1) addRow(columns, smooth, from * width, -1);
+    let sum = 0;
+    for (let x = 0; x < Math.min(width, PAPER_RADIUS); x += 1) sum += columns[x]!;
     for (let x = 0; x < width; x += 1) {
-      const x0 = Math.max(0, x - PAPER_RADIUS);
-      const x1 = Math.min(width, x + PAPER_RADIUS + 1);
-      const row = width + 1;
-      const sum = sums[y1 * row + x1]! - sums[y0 * row + x1]! - sums[y1 * row + x0]! + sums[y0 * row + x0]!;
-      const paper = sum / ((x1 - x0) * (y1 - y0));
-      const value = Math.max(0, Math.min(255, Math.round(paper - smooth[y * width + x]!)));
-      shortfall[y * width + x] = value;
+      if (x + PAPER_RADIUS < width) sum += columns[x + PAPER_RADIUS]!;
+      if (x > PAPER_RADIUS) sum -= columns[x - PAPER_RADIUS - 1]!;
+      const across = Math.min(width, x + PAPER_RADIUS + 1) - Math.max(0, x - PAPER_RADIUS);
+      const at = y * width + x;
+      const value = Math.max(0, Math.round(sum / (across * (to - from)) - smooth[at]!));
+      shortfall[at] = value;
       tally[value]! += 1;
     }
   }
   return { width, height, ink: scaled(shortfall, fullStroke(tally, width * height)) };
+}
+
+function addRow(columns: Int32Array, values: Uint8Array, start: number, times: 1 | -1): void {
+  for (let x = 0; x < columns.length; x += 1) columns[x]! += times * values[start + x]!;
 }
 
 /** The window with its strokes dark: a blueprint or an inverted scan, most of it dark, is turned over. */
@@ -101,17 +108,4 @@ function smoothed(grey: Uint8Array, width: number, height: number): Uint8Array {
     }
   }
   return both;
-}
-
-/** Sums of all values above and left of each corner, (width + 1) × (height + 1). */
-function integralOf(values: Uint8Array, width: number, height: number): Float64Array {
-  const sums = new Float64Array((width + 1) * (height + 1));
-  for (let y = 0; y < height; y += 1) {
-    let row = 0;
-    for (let x = 0; x < width; x += 1) {
-      row += values[y * width + x]!;
-      sums[(y + 1) * (width + 1) + x + 1] = sums[y * (width + 1) + x + 1]! + row;
-    }
-  }
-  return sums;
 }

@@ -129,6 +129,22 @@ describe('following the ink over a sheet', () => {
     }
   });
 
+  it('works in a smaller level while the finer one is not there yet', async () => {
+    const { window, middle } = inkScan({ ...INK_LOOKS.clean!, seed: 1 });
+    const sheet = sheetOf(window, 2);
+    const { follow } = createInkFollower({
+      ...sheet,
+      window: async (level, frame) => {
+        if (level === 0) throw new Error('The tile answered 404.');
+        return sheet.window(level, frame);
+      },
+    });
+    const answer = await follow({ from: middle[100]!, to: middle[900]!, grip: 4, fine: true });
+    expect(answer.found).toBe(true);
+    const off = strays(answer.points, middle.slice(110, 890));
+    expect(off[Math.floor(0.95 * off.length)]).toBeLessThan(2.5);
+  });
+
   it('asks again for a window that could not be fetched', async () => {
     const { window, middle } = inkScan({ ...INK_LOOKS.clean!, seed: 1 });
     const sheet = sheetOf(window, 1);
