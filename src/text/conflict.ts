@@ -1,5 +1,7 @@
+import { inLanguage } from './language.ts';
+
 /** Words of the picture of two versions. */
-export const conflictText = {
+const en = {
   picture: 'Both versions, one over the other',
   mine: 'Your version',
   theirs: 'The other version',
@@ -7,3 +9,5 @@ export const conflictText = {
   noTheirs: 'Removed by the other',
   rest: 'The rest of the net in grey.',
 } as const;
+
+export const conflictText = inLanguage({ en });
