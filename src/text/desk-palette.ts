@@ -52,9 +52,9 @@ const enDeskPaletteText = {
     knownPoint:
       'Click a place whose offset or elevation is printed on the drawing; it goes to the crossing of drawn lines, Alt stops that. Two set the section out, more check it.',
     equipotential:
-      'Click along the line. It snaps to lines and ends; Ctrl stops that, Shift keeps level, plumb or 45°.',
+      'Click along the line. It snaps to lines and ends; Alt or Ctrl stops that, Shift keeps level, plumb or 45°.',
     flowLine:
-      'Click along the line, from boundary to boundary. Ctrl stops snapping, Shift keeps level, plumb or 45°.',
+      'Click along the line, from boundary to boundary. Alt or Ctrl stops snapping, Shift keeps level, plumb or 45°.',
     phreaticLine: 'Click along the top of the flow, from the headwater face to the outlet.',
     boundary:
       'Click along the boundary. The net needs one under headwater and an outlet: tailwater, drain or free outflow.',
