@@ -1,4 +1,5 @@
 import { useStore } from 'zustand';
+import { classNames } from '#client/components/class-names.ts';
 import { lineText } from '#client/text/desk-forms.ts';
 import { editingText as text } from '#client/text/editing-lines.ts';
 import type { DeskStore } from '../model/desk-state.ts';
@@ -27,21 +28,22 @@ export function ChosenLineBar({ store, onOpen }: { store: DeskStore; onOpen: (fo
             ? text.chosen(values)
             : `${lineText.kinds[line.line]} ${line.name}`}
         </span>
+        <span className="ml-auto" />
+        {readOnly ? null : <ChooseMore store={store} />}
         <button
           type="button"
-          className="touch ml-auto underline"
+          className="touch underline"
           onClick={() => onOpen(several ? { form: 'several' } : { form: 'line', lineId })}
         >
           {lineText.properties}
         </button>
       </p>
       {readOnly ? null : (
-        <div className="flex flex-wrap gap-1.5 pb-1">
+        <div className="pb-1">
           <LineOperations
             store={store}
             {...(several ? { ops: ['join', 'reverse', 'smooth'] as const } : {})}
           />
-          <ChooseMore store={store} />
         </div>
       )}
     </div>
@@ -49,13 +51,16 @@ export function ChosenLineBar({ store, onOpen }: { store: DeskStore; onOpen: (fo
 }
 
 /** Lets clicks add to what is chosen, for those who have no Shift key at hand. */
-export function ChooseMore({ store }: { store: DeskStore }) {
+function ChooseMore({ store }: { store: DeskStore }) {
   const on = useStore(store, (state) => state.pendingEdit?.op === 'chooseMore');
   return (
     <button
       type="button"
       aria-pressed={on}
-      className={`touch rounded-sheet border px-2 py-[3px] text-sm hover:bg-hover ${on ? 'border-ink bg-chosen font-semibold' : 'border-edge bg-film'}`}
+      className={classNames(
+        'touch shrink-0 rounded-sheet border px-2 py-[3px] text-sm hover:bg-hover',
+        on ? 'border-ink bg-chosen font-semibold' : 'border-edge bg-film',
+      )}
       onClick={() => store.requestEdit({ type: 'chooseMore' })}
     >
       {text.chooseMore}

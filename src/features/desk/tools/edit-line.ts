@@ -139,13 +139,17 @@ function trim(
 }
 
 function trimResult({ id, value }: LineThing, { kept, gone }: Trimmed, context: ToolContext): LineEdit {
+  const cut = kept.at(-1) === gone[0] ? gone[0] : kept[0];
   const orphaned = notesAbout(id, context).some((at) => isNearer(at, gone, kept));
   return {
     label: editLabels.trim(value),
     ops: [{ op: 'put', entityId: id, value: withPoints(value, kept) }],
     selection: selectOne('line', id),
     notice: orphaned ? editNotices.noteOnCutOff : null,
-    sketches: [{ kind: 'lost', points: gone.map(keptPlace) }],
+    sketches: [
+      { kind: 'lost', points: gone.map(keptPlace) },
+      { kind: 'place', points: cut === undefined ? [] : [keptPlace(cut)] },
+    ],
   };
 }
 

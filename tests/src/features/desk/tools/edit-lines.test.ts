@@ -188,7 +188,10 @@ describe('trimming', () => {
       [250, 100],
       [300, 100],
     ];
-    expect(hand.overlay(251, 300).sketches).toEqual([{ kind: 'lost', points: lost }]);
+    expect(hand.overlay(251, 300).sketches).toEqual([
+      { kind: 'lost', points: lost },
+      { kind: 'place', points: [[250, 100]] },
+    ]);
     expect(hand.overlay(251, 300, { shift: true }).sketches?.[0]?.points).toHaveLength(3);
     expect(hand.overlay(600, 600).sketches).toEqual([]);
     hand.click(251, 300);
@@ -356,6 +359,30 @@ describe('joining', () => {
     hand.op('join');
     expect(hand.notice()).toMatch(reason);
     expect(hand.lines()).toHaveLength(2);
+  });
+
+  it('with a line that someone else changed meanwhile leaves that line to be settled, the joined one stands', () => {
+    const hand = toolHand({ [LINE_A]: level, [LINE_B]: right });
+    hand.store.select({ kind: 'several', ids: [LINE_A, LINE_B] });
+    hand.op('join');
+    const theirs = { ...right, name: 'theirs' };
+    hand.store.acknowledge(
+      [
+        { entityId: LINE_A, outcome: 'applied', version: 2, current: null, changedBy: null },
+        {
+          entityId: LINE_B,
+          outcome: 'conflict',
+          version: 2,
+          current: { id: LINE_B, version: 2, value: theirs },
+          changedBy: null,
+        },
+      ],
+      1,
+    );
+    expect(hand.store.getState().conflicts[LINE_B]).toMatchObject({ mine: null, theirs: { name: 'theirs' } });
+    hand.store.resolveConflict(LINE_B, 'theirs');
+    expect(hand.points(LINE_B)).toEqual(right.points);
+    expect(hand.points(LINE_A)).toHaveLength(5);
   });
 
   it('is finished only when both lines were', () => {
