@@ -73,12 +73,12 @@ export function Magnifier({ store, renderer, follow }: MagnifierProps) {
       <span className="pointer-events-none absolute bottom-0.5 left-1 bg-film px-1 text-xs text-ink-2">
         {text.magnified}
       </span>
-      <output
-        aria-live="off"
+      <span
+        data-place
         className="pointer-events-none absolute top-0.5 left-1 bg-film px-1 text-xs text-ink-2 tabular-nums"
       >
         {placingText.place(centre[0], centre[1])}
-      </output>
+      </span>
     </fieldset>
   );
 }
