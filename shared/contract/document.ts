@@ -11,7 +11,7 @@ import { type UnitSystem, unitSystem } from './unit-system.ts';
  * top-left corner, x to the right, y down, pixel centres at + 0.5); elevations, never depths, are stored.
  */
 export const FLOW_NET_FORMAT = 'tracehead/flow-net';
-export const FLOW_NET_VERSION = 2;
+export const FLOW_NET_VERSION = 3;
 
 export const entityId = z.uuid();
 const sheetPx = z.number().check(z.gte(-MAX_SHEET_PX), z.lte(MAX_SHEET_PX));
@@ -36,9 +36,9 @@ export const knownPoint = z.object({
   kind: z.literal('knownPoint'),
   name: label,
   at: sheetPoint,
-  /** Offset in the section in the document's length unit; null until typed. */
+  /** Offset in the section in the document's length unit; null while it is not known. */
   offset: z.nullable(measure),
-  /** Elevation above the document's datum in its length unit; null until typed. */
+  /** Elevation above the document's datum in its length unit; null while it is not known. One of the two is enough. */
   elevation: z.nullable(measure),
   use: z.enum(['fit', 'check']),
 });
@@ -46,11 +46,20 @@ export const knownPoint = z.object({
 /** How the section is set out. One for each section, shared by all its nets. */
 export const setOut = z.object({
   kind: z.literal('setOut'),
-  /** `points`: two or more known points. `distance`: a length between the first two known points, one elevation and one offset. */
+  /**
+   * `points`: offsets and elevations of known points. `distance`: a length between the first two known points of use
+   * `fit`, as of a scale bar, one elevation and one offset.
+   */
   method: z.enum(['points', 'distance']),
-  /** For `distance`: the length between the first two known points, document length unit. */
+  /**
+   * The known length, document length unit. For `points`: of a scale bar between the first two known points that give
+   * neither offset nor elevation, to check the fit.
+   */
   distance: z.nullable(measure),
-  /** For `distance`: what is level. `line`: the line through the two points; `sheet`: the sheet's own horizontal. */
+  /**
+   * What is level. `sheet`: the sheet's own horizontal. `line`: for `distance` the line through its two points, for
+   * `points` what the points say.
+   */
   level: z.enum(['line', 'sheet']),
   /** Which way offsets grow on the sheet as displayed; null = let the points decide. */
   offsetsGrow: z.nullable(z.enum(['left', 'right'])),
@@ -63,9 +72,13 @@ export const setOut = z.object({
   /**
    * What unequal horizontal and vertical scales of the drawing mean. `equal`: one scale. `plottingExaggeration`: the
    * picture is stretched, the ground is not. `transformedSection`: the section is drawn transformed for its
-   * anisotropy, so that kh/kv = (sx/sz)², s in length per pixel.
+   * anisotropy, so that kh/kv = (sx/sz)², s in length per pixel. `stretchedPaper`: drawn at one scale, but the paper has
+   * stretched unevenly or askew. `perspective`: drawn at one scale and photographed aslant.
    */
-  scales: z._default(z.enum(['equal', 'plottingExaggeration', 'transformedSection']), 'equal'),
+  scales: z._default(
+    z.enum(['equal', 'plottingExaggeration', 'transformedSection', 'stretchedPaper', 'perspective']),
+    'equal',
+  ),
 });
 
 export const lineKind = z.enum([
