@@ -16,10 +16,10 @@ export interface DeskHand {
 const figure = (text: string): number => Number(text.replace('−', '-'));
 
 /** What the readout says of a place on the screen. The pointer comes from a pixel away, because it has to move. */
-async function placeAt(page: Page, x: number, y: number): Promise<Place> {
+async function placeAt(page: Page, sheet: Locator, x: number, y: number): Promise<Place> {
   await page.mouse.move(x - 1, y);
   await page.mouse.move(x, y);
-  const readout = page.getByRole('status').filter({ hasText: /^x |^Offset / });
+  const readout = sheet.getByRole('status').filter({ hasText: /^x |^Offset / });
   await readout.waitFor();
   const figures = (await readout.textContent())?.match(/−?\d+(\.\d+)?/g) ?? [];
   const [first, second] = figures.map(figure);
@@ -31,16 +31,18 @@ async function placeAt(page: Page, x: number, y: number): Promise<Place> {
  * Takes the desk in hand: from two readouts it knows where the sheet lies on the screen. The view must stay as it is
  * from then on, and a section that is set out must not lie askew.
  */
-export async function takeDesk(page: Page): Promise<DeskHand> {
+export async function takeDesk(
+  page: Page,
   // The magnifier is an application too, while it is shown.
-  const sheet = page.getByRole('application', { name: / on drawing / });
+  sheet: Locator = page.getByRole('application', { name: / on drawing / }),
+): Promise<DeskHand> {
   await sheet.waitFor();
   const box = await sheet.boundingBox();
   if (!box) throw new Error('The sheet is not shown.');
   const [ax, ay] = [Math.round(box.x + box.width * 0.15), Math.round(box.y + box.height * 0.2)];
   const [bx, by] = [Math.round(box.x + box.width * 0.85), Math.round(box.y + box.height * 0.8)];
-  const a = await placeAt(page, ax, ay);
-  const b = await placeAt(page, bx, by);
+  const a = await placeAt(page, sheet, ax, ay);
+  const b = await placeAt(page, sheet, bx, by);
   const onScreen = ([x, y]: Place): [number, number] => [
     ax + ((bx - ax) * (x - a[0])) / (b[0] - a[0]),
     ay + ((by - ay) * (y - a[1])) / (b[1] - a[1]),
