@@ -97,10 +97,15 @@ function selectionOf(copies: readonly Thing[], document: FlowNetDocument) {
   );
 }
 
-/** A copy carries neither the name nor the count of its original: two lines of one count would contradict each other. */
+/**
+ * A copy carries neither the name nor the count of its original, as two lines of one count would contradict each other;
+ * and what lies elsewhere is no longer the line that was taken from the computed net.
+ */
 function asCopy(value: DocumentEntity, document: FlowNetDocument, before: readonly Thing[]): DocumentEntity {
   if (value.kind === 'line') {
-    return { ...value, name: '', drops: null, head: value.line === 'equipotential' ? null : value.head };
+    const head = value.line === 'equipotential' ? null : value.head;
+    const origin = value.origin === 'adopted' ? 'traced' : value.origin;
+    return { ...value, name: '', drops: null, head, origin };
   }
   if (value.kind !== 'readingPoint' && value.kind !== 'profile') return value;
   const alike = [

@@ -199,8 +199,8 @@ describe('moving what is chosen', () => {
 });
 
 describe('copying, removing and changing what is chosen', () => {
-  it('pastes copies beside the original and chooses them, without name and count', () => {
-    const hand = toolHand({ ...all, [LINE_A]: { ...upper, name: '4', drops: 3, head: null } });
+  it('pastes copies beside the original and chooses them, without name, count and origin', () => {
+    const hand = toolHand({ ...all, [LINE_A]: { ...upper, name: '4', drops: 3, origin: 'adopted' } });
     hand.edit({ type: 'chooseAll' });
     hand.edit({ type: 'copy' });
     hand.edit({ type: 'paste' });
