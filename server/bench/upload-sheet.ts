@@ -63,7 +63,7 @@ async function openEar(client: ApiClient, signal: AbortSignal): Promise<{ next()
   const waiting = new Set<() => void>();
   const { body } = await client.open('/live', signal);
   const listen = async () => {
-    for await (const _ of body ?? []) {
+    for await (const _ of body as ReadableStream<Uint8Array> & AsyncIterable<Uint8Array>) {
       for (const wake of waiting) wake();
       waiting.clear();
     }

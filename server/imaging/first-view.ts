@@ -2,6 +2,7 @@ import type { Sharp } from 'sharp';
 import { TILE_SIZE_PX } from '#shared/contract/limits.ts';
 import type { FirstView, RenderedSheet } from './render-types.ts';
 import { cutTiles, maxZoomOf } from './tile-pyramid.ts';
+import { type LyingScan, setUpright } from './turned-scan.ts';
 
 /** A scan with fewer pixels is cut into tiles before anybody misses it: an A1 sheet at 300 dpi has 70 million. */
 const LONG_SCAN_PIXELS = 80_000_000;
@@ -22,6 +23,18 @@ export function firstLevelOf({ widthPx, heightPx }: SheetSize): SheetSize & { zo
   const zoom = Math.min(LEVELS, maxZoom);
   const shrink = 2 ** (maxZoom - zoom);
   return { zoom, widthPx: Math.ceil(widthPx / shrink), heightPx: Math.ceil(heightPx / shrink) };
+}
+
+/** The first view of a scan that is too large to be turned in memory: made small first, then set upright. */
+export async function writeTurnedFirstView(
+  picture: Sharp,
+  scan: LyingScan,
+  sheet: SheetToCome,
+  outFolder: string,
+): Promise<FirstView> {
+  const { widthPx, heightPx } = firstLevelOf(scan);
+  const small = picture.resize({ width: widthPx, height: heightPx, fit: 'fill' });
+  return writeFirstView(await setUpright(small, scan), sheet, outFolder);
 }
 
 /**

@@ -1,7 +1,8 @@
+import { rm } from 'node:fs/promises';
 import path from 'node:path';
-import type { Metadata, Sharp } from 'sharp';
+import sharp, { type Metadata, type Sharp } from 'sharp';
 import { MAX_PIXELS } from '#shared/contract/limits.ts';
-import { takesLong, writeFirstView } from './first-view.ts';
+import { takesLong, writeFirstView, writeTurnedFirstView } from './first-view.ts';
 import { openImage, readHeader, refuseDecoding, statedDpi } from './image-source.ts';
 import { isPlainLab, openLab } from './lab-tiff.ts';
 import { refusals } from './refusal.ts';
@@ -10,6 +11,7 @@ import { pixelHeightRatio, squaredSize } from './square-pixels.ts';
 import { readTiffPages, type TiffPage } from './tiff-directory.ts';
 import { sampledFormat } from './tile-format.ts';
 import { writeTilePyramid } from './tile-pyramid.ts';
+import { type LyingScan, needsDisk, writeUpright } from './turned-scan.ts';
 
 /** Draws one page of a scan at its own size, upright, in 8-bit grey or sRGB on white. @throws RenderRefusal */
 export async function renderImage(request: RenderRequest, report: RenderReport): Promise<RenderedSheet> {
@@ -26,6 +28,11 @@ export async function renderImage(request: RenderRequest, report: RenderReport):
   }
   try {
     const format = await chooseFormat(request, header, directory);
+    const lying = lyingScan(header);
+    if (ratio === 1 && header.depth === 'uchar' && needsDisk(lying)) {
+      const sheet = { ...size, dpi: statedDpi(header), note: '', tileFormat: format };
+      return await renderTurned(request, lying, sheet, report);
+    }
     const open = async () => upright(await toEightBit(openImage(file, pageNumber), request, header), header);
     const stated = statedDpi(header);
     // Stated across the page as stored; a page stretched across has the finer resolution down the page everywhere.
@@ -40,6 +47,36 @@ export async function renderImage(request: RenderRequest, report: RenderReport):
     return { ...sheet, ...(await writeTilePyramid(image, size, format, outFolder, report.progress)) };
   } catch (error) {
     return refuseDecoding(error);
+  }
+}
+
+const lyingScan = ({ width, height, channels, orientation = 1 }: Metadata): LyingScan => ({
+  widthPx: width,
+  heightPx: height,
+  samples: channels <= 2 ? 1 : 3,
+  orientation,
+});
+
+/** A large scan that has to be turned, by way of the disk. */
+async function renderTurned(
+  { file, pageNumber, outFolder }: RenderRequest,
+  lying: LyingScan,
+  sheet: Omit<RenderedSheet, 'maxZoom' | 'tileSizePx'>,
+  report: RenderReport,
+): Promise<RenderedSheet> {
+  const asStored = () => onWhite(openImage(file, pageNumber), lying.samples);
+  const toCome = { ...sheet, sourceRows: lying.heightPx };
+  report.firstView(await writeTurnedFirstView(asStored(), lying, toCome, outFolder));
+  const upright = `${outFolder}.upright`;
+  try {
+    await writeUpright(asStored(), lying, upright);
+    const image = sharp(upright, { limitInputPixels: false });
+    return {
+      ...sheet,
+      ...(await writeTilePyramid(image, sheet, sheet.tileFormat, outFolder, report.progress)),
+    };
+  } finally {
+    await rm(upright, { force: true });
   }
 }
 
@@ -58,11 +95,11 @@ function stretchNote(ratio: number): string {
   return 'The scan has more dots per inch in one direction than in the other, as fax machines make them; it was stretched so that lengths are true.';
 }
 
+const onWhite = (image: Sharp, samples: 1 | 3): Sharp =>
+  image.flatten({ background: '#ffffff' }).toColourspace(samples === 1 ? 'b-w' : 'srgb');
+
 function upright(image: Sharp, header: Metadata): Sharp {
-  return image
-    .autoOrient()
-    .flatten({ background: '#ffffff' })
-    .toColourspace(header.channels <= 2 ? 'b-w' : 'srgb');
+  return onWhite(image.autoOrient(), header.channels <= 2 ? 1 : 3);
 }
 
 /**
