@@ -8,7 +8,7 @@ const en = {
   nothingToUndo: 'There is nothing to take back.',
   nothingToRedo: 'There is nothing to do again.',
   changedSince: (label: string) =>
-    `Cannot take back “${label}”: it was changed by someone else since. The step before it can be taken back next.`,
+    `Cannot take back “${label}”: it was changed since, by someone else or in another window. The step before it can be taken back next.`,
   severalRefused: (more: number, first: string) =>
     `${first} So it was with ${more} more ${more === 1 ? 'step' : 'steps'}.`,
   undone: (label: string) => `Took back: ${label}`,

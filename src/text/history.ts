@@ -18,6 +18,6 @@ const en = {
   kept: 'These steps stay at hand over a reload.',
   notKept: 'This browser does not keep these steps: a reload ends them.',
   dropped: (count: number) =>
-    `${count} older ${count === 1 ? 'step does' : 'steps do'} not fit into what this browser keeps, and ${count === 1 ? 'ends' : 'end'} with a reload.`,
+    `${count} older ${count === 1 ? 'step does' : 'steps do'} not fit into what this browser keeps over a reload.`,
 } as const;
 export const historyText = inLanguage({ en });

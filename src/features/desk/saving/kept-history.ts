@@ -15,8 +15,11 @@ export interface KeptHistory {
   undone: KeptStep[];
 }
 
-/** Characters that the steps of one net may fill: several thousand steps of lines of a hundred points. */
-export const LARGEST_HISTORY = 24_000_000;
+/**
+ * Characters that the steps of one net may fill: some three thousand steps on lines of a hundred points. They are all
+ * in memory again after a reload, at several bytes for each character.
+ */
+export const LARGEST_HISTORY = 8_000_000;
 
 export const EMPTY_KEPT: KeptHistory = { nextId: 1, dropped: 0, done: [], undone: [] };
 
