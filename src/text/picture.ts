@@ -17,7 +17,7 @@ const en = {
   widthField: 'Width, px',
   widthWrong: (least: number, most: number) => `Type a whole number from ${least} to ${most}.`,
   scale: 'Scale',
-  fits: (n: string | null) => (n === null ? 'As large as fits' : `As large as fits, about 1:${n}`),
+  fits: (n: string | null) => (n === null ? 'As large as fits' : `Largest, about 1:${n}`),
   scaleOf: (n: string) => `1:${n}`,
   noScale: 'The section is not set out, so the picture has no scale.',
   sizeOf: (width: number, height: number, dpi: string) => `${width} × ${height} px, ${dpi} dots per inch`,

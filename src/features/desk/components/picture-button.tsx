@@ -1,4 +1,5 @@
 import { lazy, Suspense, useState } from 'react';
+import { createPortal } from 'react-dom';
 import { pictureText as text } from '#client/text/picture.ts';
 import type { PictureOf } from './picture-dialog.tsx';
 
@@ -19,11 +20,15 @@ export function PictureButton({ of }: { of: PictureOf }) {
       >
         {text.open}
       </button>
-      {open ? (
-        <Suspense fallback={null}>
-          <PictureDialog of={of} onClose={() => setOpen(false)} />
-        </Suspense>
-      ) : null}
+      {open
+        ? // Outside of the sheet, which takes every press on what lies in it.
+          createPortal(
+            <Suspense fallback={null}>
+              <PictureDialog of={of} onClose={() => setOpen(false)} />
+            </Suspense>,
+            document.body,
+          )
+        : null}
     </>
   );
 }

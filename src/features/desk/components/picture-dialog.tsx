@@ -101,11 +101,7 @@ export default function PictureDialog({ of, onClose }: { of: PictureOf; onClose:
         </div>
         <PlanLine plan={plan} dpi={dpi} measured={measure !== null} />
         <p className="m-0 text-sm text-ink-2">{text.printHint}</p>
-        {painting.busy ? (
-          <div className="flex items-center gap-3">
-            <ProgressBar label={text.making} value={painting.share} />
-          </div>
-        ) : null}
+        {painting.busy ? <ProgressBar label={text.making} value={painting.share} /> : null}
         {painting.failed ? (
           <p role="alert" className="m-0 text-wrong">
             {text.failed}
@@ -232,8 +228,10 @@ function usePainting(plan: PicturePlan | null) {
     setShare(0);
     try {
       then(await paintPicture(plan.job, own.signal, setShare));
-    } catch {
-      if (!own.signal.aborted) setFailed(true);
+    } catch (error) {
+      if (own.signal.aborted) return;
+      console.error(error);
+      setFailed(true);
     } finally {
       if (!own.signal.aborted) setShare(null);
     }

@@ -253,7 +253,7 @@ function isControl(pressed: EventTarget | null, sheet: HTMLElement): boolean {
   if (pressed === sheet || pressed === null) return false;
   const node = pressed as Node;
   const element = 'closest' in node ? (node as Element) : node.parentElement;
-  return (element?.closest('[data-over-sheet]') ?? null) !== null;
+  return (element?.closest('[data-over-sheet], dialog') ?? null) !== null;
 }
 
 function keysOf(event: PointerEvent): Modifiers {
