@@ -25,8 +25,15 @@ export type FollowQuestion = {
   readonly fine: boolean;
 };
 
-/** A line along the ink in sheet pixels; `found` is false where most of it runs over bare paper. */
-export type FollowedPath = { readonly points: readonly Place[]; readonly found: boolean };
+/**
+ * A line along the ink in sheet pixels; `found` is false where most of it runs over bare paper, `fine` where it is
+ * a look at a smaller level that has still to be followed at full size.
+ */
+export type FollowedPath = {
+  readonly points: readonly Place[];
+  readonly found: boolean;
+  readonly fine: boolean;
+};
 
 /** The part of a line that has to run on ink: a dashed line has gaps of half its length. */
 const LEAST_ON_INK = 0.5;
@@ -94,8 +101,9 @@ export function createInkFollower(sheet: InkSheet): {
   return {
     async follow({ from, to, grip, fine }) {
       const { level, ...first } = await firstLook(from, to, grip);
-      if (first.onInk < LEAST_ON_INK) return { points: [from, to], found: false };
-      if (level === 0 || !fine) return { points: first.points, found: true };
+      const done = level === 0 || fine;
+      if (first.onInk < LEAST_ON_INK) return { points: [from, to], found: false, fine: done };
+      if (level === 0 || !fine) return { points: first.points, found: true, fine: done };
       const points: Place[] = [];
       for (const piece of piecesOf(first.points, PIECE)) {
         const start = points.at(-1) ?? piece[0]!;
@@ -103,10 +111,10 @@ export function createInkFollower(sheet: InkSheet): {
         const reach = points.length === 0 ? Math.max(grip, 2 ** level) : 2 ** (level + 1);
         const room = 8 + 6 * 2 ** level;
         const found = await within(0, piece, room, [start, piece.at(-1)!], reach).catch(() => null);
-        if (found === null) return { points: first.points, found: true };
+        if (found === null) return { points: first.points, found: true, fine: true };
         points.push(...(points.length === 0 ? found.points : found.points.slice(1)));
       }
-      return { points: thinned(points as [number, number][], 0.3), found: true };
+      return { points: thinned(points as [number, number][], 0.3), found: true, fine: true };
     },
   };
 }

@@ -98,7 +98,7 @@ describe('drawing on a real scan', () => {
     for (const at of ON_RING) await hand.click(at);
     await page.keyboard.up('Control');
     await page.keyboard.press('Enter');
-    await page.getByText(/^Tracing/).waitFor({ state: 'detached' });
+    await page.getByText(/^Tracing/).waitFor({ state: 'detached', timeout: 45_000 });
     const [line] = await savedLines();
     const places = along(line!.points);
     // Half of a ring of some 410 px radius; a straight join of the clicks would be 1,150 px long.

@@ -86,11 +86,18 @@ export function createInkClient(sheet: InkTiles, start: () => InkWorker = START)
     onLook(listener) {
       tell = listener;
     },
-    follow: (reach) => ask(reach, true),
+    // What is shown before a click is what the click adds, where it was found at full size.
+    follow: async (reach) =>
+      newest?.path?.fine && isSameReach(newest, reach) ? newest.path : ask(reach, true),
     close() {
       next = null;
       tell = () => {};
       failAll();
     },
   };
+}
+
+export function isSameReach(a: InkReach, b: InkReach): boolean {
+  const same = (p: SheetPx, q: SheetPx) => p[0] === q[0] && p[1] === q[1];
+  return a.grip === b.grip && same(a.from, b.from) && same(a.to, b.to);
 }

@@ -90,6 +90,7 @@ describe('following the ink over a sheet', () => {
     });
     expect(answer).toEqual({
       found: false,
+      fine: true,
       points: [
         [50, 60],
         [500, 300],
@@ -118,8 +119,10 @@ describe('following the ink over a sheet', () => {
     const follower = createInkFollower(sheet);
     const look = await follower.follow({ ...question, fine: false });
     expect(sheet.asked.every((asked) => !asked.startsWith('0 '))).toBe(true);
+    expect(look.fine).toBe(false);
     expect(strays(look.points, middle.slice(60, 5340)).at(-1)).toBeLessThan(12);
     const answer = await follower.follow({ ...question, fine: true });
+    expect(answer.fine).toBe(true);
     const off = strays(answer.points, middle.slice(60, 5340));
     expect(off[Math.floor(0.95 * off.length)]).toBeLessThan(0.8);
     expect(off.at(-1)).toBeLessThan(2.5);

@@ -1,4 +1,4 @@
-import type { InkClient, InkReach } from '../../model/ink-client.ts';
+import { type InkClient, type InkReach, isSameReach } from '../../model/ink-client.ts';
 import type { FollowedEvent, ToolCommand, ToolEvent } from '../tool-types.ts';
 
 type Follow = Extract<ToolCommand, { do: 'follow' }>;
@@ -49,13 +49,9 @@ export function createInkTurn<View>(
       });
     },
     look(reach) {
-      if (looked !== null && isSame(looked, reach)) return;
+      if (looked !== null && isSameReach(looked, reach)) return;
       looked = reach;
       ink?.look(reach);
     },
   };
-}
-
-function isSame(a: InkReach, b: InkReach): boolean {
-  return a.from[0] === b.from[0] && a.from[1] === b.from[1] && a.to[0] === b.to[0] && a.to[1] === b.to[1];
 }

@@ -28,9 +28,11 @@ function stand() {
     asked,
     worker,
     ended: () => ended,
-    async answer(i: number) {
+    async answer(i: number, fine = true) {
       const { number, from, to } = asked[i]!;
-      worker.onmessage?.({ data: { number, path: { points: [from, to], found: true } } } as MessageEvent);
+      worker.onmessage?.({
+        data: { number, path: { points: [from, to], found: true, fine } },
+      } as MessageEvent);
       await settled();
     },
     async fail() {
@@ -72,6 +74,20 @@ describe('asking where the ink runs', () => {
     expect(desk.asked.map(({ fine }) => fine)).toEqual([false, true]);
     await desk.answer(1);
     expect((await line)?.points).toHaveLength(2);
+  });
+
+  it('takes what was shown for a click where that was found at full size, and asks where it was not', async () => {
+    const desk = stand();
+    const client = createInkClient(SHEET, () => desk.worker);
+    client.look(reach(10));
+    await desk.answer(0, true);
+    expect(await client.follow(reach(10))).toBe(client.newest()!.path);
+    expect(desk.asked).toHaveLength(1);
+    client.look(reach(900));
+    await desk.answer(1, false);
+    void client.follow(reach(900));
+    void client.follow(reach(20));
+    expect(desk.asked).toHaveLength(4);
   });
 
   it('answers nothing when the worker fails, and starts another for the next question', async () => {

@@ -222,7 +222,7 @@ function inkStand() {
   };
 }
 
-const along = (...points: Array<[number, number]>): FollowedPath => ({ points, found: true });
+const along = (...points: Array<[number, number]>): FollowedPath => ({ points, found: true, fine: true });
 
 describe('a line along the ink', () => {
   it('runs where the ink was found, its first vertex moved onto the stroke', async () => {
@@ -276,7 +276,7 @@ describe('a line along the ink', () => {
   });
 
   it.each([
-    [{ points: [], found: false } as FollowedPath, drawingWayText.noInk],
+    [{ points: [], found: false, fine: true } as FollowedPath, drawingWayText.noInk],
     [null, drawingWayText.scanUnread],
   ])('joins straight and says why where there is none', async (path, notice) => {
     const ink = inkStand();
