@@ -99,7 +99,7 @@ export function tracedDocument({ net, pxPerUnit, jitterPx, seed, places }: Trace
   const entities = values.map((value, i) => ({ id: idOf(i + 1), version: 1, value }));
   return {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: idOf(0xfff0),
     name: 'Bench net',
     unitSystem: 'SI',

@@ -13,6 +13,7 @@ import { DocumentVersion21796126400013 } from './1796126400013-document-version-
 import { CalculationSheets1796126400060 } from './1796126400060-calculation-sheets.ts';
 import { FirstView1796126400100 } from './1796126400100-first-view.ts';
 import { Renditions1796126400110 } from './1796126400110-renditions.ts';
+import { DocumentVersion31796126400111 } from './1796126400111-document-version-3.ts';
 import { NetPresence1796126400120 } from './1796126400120-net-presence.ts';
 
 /** In the order they run. */
@@ -32,5 +33,6 @@ export const migrations = [
   CalculationSheets1796126400060,
   FirstView1796126400100,
   Renditions1796126400110,
+  DocumentVersion31796126400111,
   NetPresence1796126400120,
 ];

@@ -26,8 +26,20 @@ export type SectionMap = {
   readonly up: readonly [x: number, y: number];
   /** Change of offset and elevation with a step in pixels. */
   readonly linear: LinearMap;
+  /** Where lengths differ from place to place, as on a photograph taken aslant: the pixels in which a net is read. */
+  readonly flattened?: FlattenedMap;
   /** Natural length of a step of one pixel in the direction (dx, dy), which need not be a unit vector. */
   lengthPerPxAlong(dx: number, dy: number): number;
+};
+
+/** Pixels of a picture whose section has one scale and no perspective. */
+export type FlattenedMap = {
+  /** From these pixels to the natural section. */
+  readonly map: SectionMap;
+  /** The same figures for the same pixels. */
+  readonly key: readonly number[];
+  toFlat(place: SheetPx): SheetPx;
+  toSheet(place: SheetPx): SheetPx;
 };
 
 /** The map that belongs to a fitted similarity. The similarity's scale must not be zero. */

@@ -3,6 +3,7 @@ import { sheetPx } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import type { FitGrounds, FittedSection } from '#shared/compute/set-out-fit.ts';
 import { controlPlaces } from '#shared/compute/set-out-points.ts';
+import { lostShapeOf, questionShape } from '#shared/compute/set-out-shape.ts';
 import { suspectAmong } from '#shared/compute/set-out-suspect.ts';
 import { questionEqualScales } from '#shared/compute/set-out-unequal.ts';
 import { type EntityOf, entitiesOf, type FlowNetDocument } from '#shared/contract/document.ts';
@@ -46,7 +47,7 @@ export function setOutFindings(
   if (unequal.some(({ weight }) => weight === 'wrong')) return unequal;
   return [
     ...unequal,
-    ...(setOut.scales === 'equal' ? [] : declaredFindings(fit)),
+    ...(setOut.scales === 'equal' ? [] : declaredFindings(document, setOut, fit, grounds)),
     ...scaleFindings(impliedScale, setOut.statedScale, fit),
     ...residualFindings(document, fit.map, residual),
     ...suspectFindings(document, setOut, fit, grounds),
@@ -68,7 +69,18 @@ function equalScaleFindings(
   return questionEqualScales(controlPlaces(entitiesOf(document, 'knownPoint')), fit, setOut, scalePerPx);
 }
 
-function declaredFindings({ along, up }: FittedSection): Finding[] {
+function declaredFindings(
+  document: FlowNetDocument,
+  setOut: EntityOf<'setOut'>,
+  fit: FittedSection,
+  grounds: FitGrounds,
+): Finding[] {
+  const shape = lostShapeOf(setOut);
+  const places = controlPlaces(entitiesOf(document, 'knownPoint'));
+  return shape === null ? twoScaleFindings(fit) : questionShape(places, shape, fit, grounds);
+}
+
+function twoScaleFindings({ along, up }: FittedSection): Finding[] {
   if (Math.abs(along / up - 1) > EQUAL_PART) return [];
   return [
     makeFinding(

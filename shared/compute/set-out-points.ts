@@ -2,6 +2,7 @@ import { makeFinding } from '#shared/compute/findings.ts';
 import { type KnownPlace, knownFigures, rangeOfKnown } from '#shared/compute/known-places.ts';
 import { type FitGrounds, fittedBy, type SetOutFit } from '#shared/compute/set-out-fit.ts';
 import { fitByScales } from '#shared/compute/set-out-scales.ts';
+import { fitByShape, lostShapeOf } from '#shared/compute/set-out-shape.ts';
 import {
   askOffsets,
   askUp,
@@ -51,6 +52,8 @@ export function fitByPoints(points: readonly KnownPoint[], setOut: EntityOf<'set
   ) {
     return coincident(used);
   }
+  const shape = lostShapeOf(setOut);
+  if (shape !== null) return fitByShape(places, shape, setOut);
   return setOut.scales === 'equal' ? fitByOneScale(used, places, setOut) : fitByScales(places, setOut);
 }
 

@@ -2,6 +2,7 @@ import { normalTail, studentTail } from '#shared/compute/doubt/tails.ts';
 import { type KnownPlace, knownFigures } from '#shared/compute/known-places.ts';
 import { type FittedSection, fittedBy, fittedByScales, squaresOfMiss } from '#shared/compute/set-out-fit.ts';
 import { placeOf } from '#shared/compute/set-out-points.ts';
+import { fitOfShape, isLostShape, unknownsOfShape } from '#shared/compute/set-out-shape.ts';
 import { fitSimilarity } from '#shared/compute/similarity.ts';
 import { singleInputs } from '#shared/compute/single-inputs.ts';
 import { fitTwoScales } from '#shared/compute/two-scales.ts';
@@ -66,6 +67,7 @@ export function suspectAmong(document: FlowNetDocument, model: FittedModel): Sus
 }
 
 function unknownsOf({ scales, turnFromSheet }: FittedModel): number {
+  if (isLostShape(scales)) return unknownsOfShape(scales);
   return (scales === 'equal' ? 4 : 5) - (turnFromSheet ? 1 : 0);
 }
 
@@ -74,6 +76,7 @@ function refitted(places: readonly KnownPlace[], model: FittedModel): FittedSect
   const { rotation, mirrored } = model.fit;
   const turn = model.turnFromSheet ? rotation : null;
   const grounds = { redundant: 0, turnFromSheet: model.turnFromSheet };
+  if (isLostShape(model.scales)) return fitOfShape(places, model.scales);
   if (model.scales === 'equal') {
     const fit = fitSimilarity(places, mirrored, turn);
     const answer = fit === null ? null : fittedBy(fit, grounds);

@@ -2,6 +2,7 @@ import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import type { Pair } from '#shared/compute/geometry/predicates.ts';
 import {
   composed,
+  determinantOf,
   greatestStretch,
   IDENTITY,
   inverted,
@@ -10,7 +11,7 @@ import {
   nearlySame,
   scaledBy,
 } from '#shared/compute/linear-map.ts';
-import { type SectionMap, sectionMapOfFit } from '#shared/compute/section-map.ts';
+import { type FlattenedMap, type SectionMap, sectionMapOfFit } from '#shared/compute/section-map.ts';
 import { type CommonAnisotropy, NATURAL } from '#shared/compute/soils/anisotropy.ts';
 import type { DocumentEntity, FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { Finding } from '#shared/contract/reading.ts';
@@ -31,6 +32,8 @@ export type WorkingFrame = {
   readonly dipDeg: number;
   /** Sheet pixels to working pixels. */
   readonly matrix: LinearMap;
+  /** The same figures for the same working pixels. */
+  readonly key: readonly number[];
   /** True when working pixels are the sheet's own. */
   readonly isSheet: boolean;
   /** Working pixels to the natural section and back: elevations, lengths and gradients are read through it. */
@@ -52,9 +55,27 @@ const ROUNDING = 1e-9;
  * Samsioe (1931); Casagrande (1937); Harr (1962), ch. 1.
  */
 export function workingFrameOf(sheetMap: SectionMap, anisotropy: CommonAnisotropy): WorkingFrame {
+  const { flattened } = sheetMap;
+  return flattened === undefined
+    ? affineFrameOf(sheetMap, anisotropy)
+    : flattenedFrame(affineFrameOf(flattened.map, anisotropy), flattened);
+}
+
+/** The frame of a picture that is flattened first: a photograph taken aslant is read as if it had been taken upright. */
+function flattenedFrame(frame: WorkingFrame, { key, toFlat, toSheet }: FlattenedMap): WorkingFrame {
+  return {
+    ...frame,
+    isSheet: false,
+    key: [...frame.key, ...key],
+    toWorking: ([x, y]) => frame.toWorking(toFlat(sheetPx(x, y))),
+    toSheet: (place) => toSheet(frame.toSheet(place)),
+  };
+}
+
+function affineFrameOf(sheetMap: SectionMap, anisotropy: CommonAnisotropy): WorkingFrame {
   const factor = Math.sqrt(1 / anisotropy.ratio);
   const squeezed = composed(squeezeAlongBedding(factor, anisotropy.dipDeg), sheetMap.linear);
-  const turned = composed(transposedDirections(sheetMap.linear), squeezed);
+  const turned = composed(backTurnOf(sheetMap.linear), squeezed);
   const matrix = scaledBy(turned, 1 / greatestStretch(turned));
   const isSheet = nearlySame(matrix, IDENTITY, ROUNDING);
   const { kind, ratio, dipDeg } = anisotropy;
@@ -63,6 +84,7 @@ export function workingFrameOf(sheetMap: SectionMap, anisotropy: CommonAnisotrop
     return {
       ...common,
       matrix: IDENTITY,
+      key: IDENTITY,
       map: sheetMap,
       toWorking: ([x, y]) => sheetPx(x, y),
       toSheet: ([x, y]) => sheetPx(x, y),
@@ -72,6 +94,7 @@ export function workingFrameOf(sheetMap: SectionMap, anisotropy: CommonAnisotrop
   return {
     ...common,
     matrix,
+    key: matrix,
     map: sectionMapOfFit(
       {
         linear: composed(sheetMap.linear, back),
@@ -93,11 +116,19 @@ function squeezeAlongBedding(factor: number, dipDeg: number): LinearMap {
   return [1 - less * ex * ex, -less * ex * ez, -less * ex * ez, 1 - less * ez * ez];
 }
 
-/** Transpose of the unit vectors of offset and elevation on the sheet. */
-function transposedDirections([a, b, c, d]: LinearMap): LinearMap {
+/**
+ * Transpose of the turn, or turn and mirror, that is nearest to the directions of offset and elevation on the sheet. It
+ * is these directions themselves where they are square to one another, as they are but on paper that has stretched
+ * askew. Source: the orthogonal factor of the polar decomposition, in closed form (Higham 1986, section 2).
+ */
+function backTurnOf([a, b, c, d]: LinearMap): LinearMap {
   const along = Math.hypot(a, b);
   const up = Math.hypot(c, d);
-  return [a / along, c / up, b / along, d / up];
+  const rows: LinearMap = [a / along, b / along, c / up, d / up];
+  const side = Math.sign(determinantOf(rows));
+  const [p, q] = [rows[0] + side * rows[3], rows[1] - side * rows[2]];
+  const length = Math.hypot(p, q);
+  return [p / length, (-side * q) / length, q / length, (side * p) / length];
 }
 
 /**
@@ -111,24 +142,31 @@ export function tracesInWorkingFrame(document: FlowNetDocument, frame: WorkingFr
     return [x, y];
   };
   const entities = Object.entries(document.entities).map(
-    ([id, entity]) => [id, { ...entity, value: movedOnce(entity.value, frame.matrix, move) }] as const,
+    ([id, entity]) => [id, { ...entity, value: movedOnce(entity.value, frame.key, move) }] as const,
   );
   return { ...document, entities: Object.fromEntries(entities) };
 }
 
 /** Kept as long as the value is: a line that was not touched is the same in the same frame. */
-const kept = new WeakMap<DocumentEntity, { readonly matrix: LinearMap; readonly moved: DocumentEntity }>();
+const kept = new WeakMap<
+  DocumentEntity,
+  { readonly key: readonly number[]; readonly moved: DocumentEntity }
+>();
 
 function movedOnce(
   value: DocumentEntity,
-  matrix: LinearMap,
+  key: readonly number[],
   move: (place: SheetPoint) => SheetPoint,
 ): DocumentEntity {
   const known = kept.get(value);
-  if (known !== undefined && nearlySame(known.matrix, matrix, 0)) return known.moved;
+  if (known !== undefined && isSameKey(known.key, key)) return known.moved;
   const there = moved(value, move);
-  kept.set(value, { matrix, moved: there });
+  kept.set(value, { key, moved: there });
   return there;
+}
+
+function isSameKey(a: readonly number[], b: readonly number[]): boolean {
+  return a.length === b.length && a.every((entry, i) => entry === b[i]);
 }
 
 function moved(value: DocumentEntity, move: (place: SheetPoint) => SheetPoint): DocumentEntity {

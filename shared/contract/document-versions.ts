@@ -4,6 +4,8 @@ import { type DocumentEntity, documentEntity, FLOW_NET_VERSION } from './documen
 const UPGRADES: Readonly<Record<number, (document: Record<string, unknown>) => Record<string, unknown>>> = {
   // Version 2 only adds fields and kinds, and the schema fills what an older document leaves out.
   1: (document) => document,
+  // Version 3 only adds ways of setting out.
+  2: (document) => document,
 };
 
 /**

@@ -79,7 +79,8 @@ const en = {
   specksHint: '0 takes out none. Lines stay, however thin.',
   specksWrong: (most: number) => `Type a whole number from 0 to ${most}.`,
   closeUp: 'Close-up at full size',
-  closeUpHint: 'Press the picture to look at another place.',
+  closeUpHint:
+    'Press the picture to look at another place. Thin lines may look broken in small; here they are as they will be.',
 
   pictures: 'Pictures of this sheet',
   scan: 'The scan',

@@ -153,7 +153,7 @@ const singles: fc.Arbitrary<DocumentEntity>[] = [
 function documentOf(values: readonly DocumentEntity[], unitSystem: 'SI' | 'US'): FlowNetDocument {
   return {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: entityIdOf(0xabcd),
     name: '',
     unitSystem,

@@ -34,7 +34,7 @@ export function sectionOf(
   ];
   return {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: entityIdOf(999),
     name: '',
     unitSystem: rest.unitSystem ?? 'SI',

@@ -29,7 +29,7 @@ const versioned = (values: Array<readonly [string, DocumentEntity]>) =>
 function documentOf(demo: DemoNet, frame: SheetFrame, more: DocumentEntity[] = []): FlowNetDocument {
   const fresh: FlowNetDocument = {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: uuidv7(),
     name: 'demo',
     unitSystem: 'SI',

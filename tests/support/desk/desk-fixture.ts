@@ -40,7 +40,7 @@ export function documentWith(values: Record<string, DocumentEntity>): FlowNetDoc
   for (const [id, value] of Object.entries(values)) entities[id] = { id, version: 1, value };
   return {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: '00000000-0000-7000-8000-00000000d0c0',
     name: 'Full supply level',
     unitSystem: 'SI',

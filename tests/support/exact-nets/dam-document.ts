@@ -87,7 +87,7 @@ export function damDocument({
   ];
   return {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: entityIdOf(0xda),
     name: '',
     unitSystem: 'SI',

@@ -115,7 +115,7 @@ export function exactNetDocument(net: DrawnNet, tracing: Tracing = {}): FlowNetD
   ];
   return {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: entityIdOf(0xfff0),
     name: 'Exact net',
     unitSystem: tracing.unitSystem ?? 'SI',

@@ -38,7 +38,7 @@ export function CleanUp({ sheet: now, onBack }: { sheet: SheetDto; onBack: () =>
     <div className="grid grid-cols-[minmax(0,1fr)] gap-4 lg:grid-cols-[minmax(0,1fr)_360px]">
       <Panel
         look="register"
-        className="min-w-0 self-start"
+        className="min-w-0 self-start lg:sticky lg:top-3"
         title={text.title(sheet.pageNumber)}
         action={
           <>

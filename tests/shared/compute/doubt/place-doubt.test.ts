@@ -47,7 +47,7 @@ function setOutBy(
   const idOf = (i: number) => `019a3c00-0000-7000-8000-00000000000${i}`;
   return {
     format: 'tracehead/flow-net',
-    version: 2,
+    version: 3,
     id: idOf(9),
     name: '',
     unitSystem: 'SI',
