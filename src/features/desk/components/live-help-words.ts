@@ -8,13 +8,15 @@ type Read = Pick<DeskState, 'document' | 'reading' | 'documentRevision'>;
 
 /** What is told of a place while a line is drawn, a line of words for each fact. `place`: its offset and elevation. */
 export function helpWords(shown: HelpShown, place: readonly string[], read: Read): string[] {
-  return [
+  const words = [
     ...(shown.snap === null ? [] : [text.snaps[shown.snap]]),
     ...place,
     ...headWords(shown.head, read),
     ...angleWords(shown.help),
     ...cellWords(shown.help),
   ];
+  // Two lines met alike say the same.
+  return [...new Set(words)];
 }
 
 /** The head with the lines it lies between, and of which net it is. */

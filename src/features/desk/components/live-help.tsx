@@ -52,6 +52,7 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
     reading,
     documentRevision,
   });
+  if (words.length === 0) return null;
   const [x, y] = toScreen(view, shown.at);
   const height = words.length * LINE_PX;
   const width = CHARACTER_PX * Math.max(...words.map((line) => line.length));
@@ -83,13 +84,13 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
 /** Tells, when it is asked, what stands at the pointer. */
 function Told({ store, source }: Pick<LiveHelpProps, 'store' | 'source'>) {
   const [told, setTold] = useState('');
-  useEffect(
-    () =>
-      store.onIntent((intent) => {
-        if (intent.type === 'tellPlace') void wordsNow(store, source).then(setTold);
-      }),
-    [store, source],
-  );
+  useEffect(() => {
+    // The same words again are only told when they are not quite the same text.
+    const tell = (words: string) => setTold((now) => (now === words ? `${words}\u00a0` : words));
+    return store.onIntent((intent) => {
+      if (intent.type === 'tellPlace') void wordsNow(store, source).then(tell);
+    });
+  }, [store, source]);
   return <output className="sr-only">{told}</output>;
 }
 
