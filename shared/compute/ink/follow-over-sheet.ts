@@ -26,8 +26,8 @@ export type FollowQuestion = {
 };
 
 /**
- * A line along the ink in sheet pixels; `found` is false where most of it runs over bare paper, `fine` where it is
- * a look at a smaller level that has still to be followed at full size.
+ * A line along the ink in sheet pixels. `found` is false where most of it runs over bare paper, `fine` is false of a look
+ * at a smaller level that has still to be followed at full size.
  */
 export type FollowedPath = {
   readonly points: readonly Place[];
