@@ -1,6 +1,8 @@
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import type { EditEvent, LineOp } from '../model/pending-edit.ts';
+import type { ViewStore } from '../model/view-store.ts';
+import { stepAsSeen } from '../model/viewport.ts';
 
 /** Keys of what can be done with the chosen line. */
 export const EDIT_KEYS: Readonly<Record<string, LineOp>> = {
@@ -26,9 +28,10 @@ const NUDGES: Readonly<Record<string, SheetPoint>> = {
 const FAR_PX = 10;
 
 type Target = { readonly store: DeskStore };
+type SheetTarget = Target & { readonly views: ViewStore };
 
 /** Keys about what is chosen while the sheet has the focus. True when the key was used. */
-export function sheetEditKey(event: KeyboardEvent, { store }: Target): boolean {
+export function sheetEditKey(event: KeyboardEvent, { store, views }: SheetTarget): boolean {
   if (event.altKey) return false;
   if (event.ctrlKey || event.metaKey) {
     const type = event.shiftKey ? undefined : WITH_CTRL[event.key.toLowerCase()];
@@ -39,7 +42,10 @@ export function sheetEditKey(event: KeyboardEvent, { store }: Target): boolean {
   const step = NUDGES[event.key];
   if (step === undefined || !isMovedByArrows(store.getState())) return false;
   const times = event.shiftKey ? FAR_PX : 1;
-  store.requestEdit({ type: 'nudge', by: [step[0] * times, step[1] * times] });
+  store.requestEdit({
+    type: 'nudge',
+    by: stepAsSeen(views.getState().view, step[0] * times, step[1] * times),
+  });
   return true;
 }
 

@@ -139,6 +139,14 @@ export function steppedOnScreen(view: Viewport, from: SheetPx, dx: number, dy: n
   return sheetPx(from[0] + scale * x, from[1] + scale * y);
 }
 
+/** The step on the sheet that goes in a direction as it is seen in the middle of the view, so many sheet pixels long. */
+export function stepAsSeen(view: Viewport, dx: number, dy: number): readonly [number, number] {
+  if (view.seenAs === undefined) return [dx, dy];
+  const middle = toSheet(view, screenPx(view.widthPx / 2, view.heightPx / 2));
+  const to = steppedOnScreen(view, middle, dx, dy);
+  return [to[0] - middle[0], to[1] - middle[1]];
+}
+
 /** A view in which a frame of the sheet is seen whole and centred. */
 export function fitFrame(view: Viewport, frame: SheetFrame): Viewport {
   return fitPicture(view, frameThrough(view.seenAs, frame));

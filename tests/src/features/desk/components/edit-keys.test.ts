@@ -2,7 +2,10 @@ import { describe, expect, it } from 'vitest';
 import { deskEditKey, sheetEditKey, sheetEditKeyUp } from '#client/features/desk/components/edit-keys.ts';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
 import type { EditEvent } from '#client/features/desk/model/pending-edit.ts';
+import { createViewStore } from '#client/features/desk/model/view-store.ts';
 import { documentWith, LINE_A, tracedLine } from '#tests/support/desk/desk-fixture.ts';
+
+const SHEET = { widthPx: 4000, heightPx: 3000 };
 
 const line = tracedLine([
   [100, 100],
@@ -17,7 +20,8 @@ function keys(readOnly = false) {
   return {
     store,
     asked,
-    sheet: (key: string, held: Partial<KeyboardEvent> = {}) => sheetEditKey(event(key, held), { store }),
+    sheet: (key: string, held: Partial<KeyboardEvent> = {}) =>
+      sheetEditKey(event(key, held), { store, views: createViewStore(SHEET, null) }),
     desk: (key: string, held: Partial<KeyboardEvent> = {}) => deskEditKey(event(key, held), { store }),
     up: (key: string) => sheetEditKeyUp(event(key), { store }),
   };

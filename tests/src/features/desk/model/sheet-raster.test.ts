@@ -6,6 +6,7 @@ import {
   rasterMap,
   seenOfRaster,
   sheetZoom,
+  stepAsSeen,
   steppedOnScreen,
   toScreen,
   toSheet,
@@ -105,6 +106,8 @@ describe('the raster by which a sheet is shown', () => {
     // To the right on a picture turned clockwise is up on the sheet.
     expect(at[0]).toBeCloseTo(1000, 9);
     expect(at[1]).toBeCloseTo(990, 9);
+    expect(stepAsSeen(view(), 0, 10)[0]).toBeCloseTo(10, 9);
+    expect(stepAsSeen(viewOf(plain).view(), 3, 4)).toEqual([3, 4]);
     expect(sheetZoom(view())).toBeCloseTo(view().zoom, 9);
   });
 
