@@ -3,7 +3,7 @@ import { editLabels, editNotices, editRefusals } from '#client/text/editing-line
 import { joined, widestGap } from '#shared/compute/geometry/edit-lines/join.ts';
 import type { TracedLine } from '#shared/contract/document.ts';
 import { selectOne } from '../model/selection.ts';
-import type { EditResult, LineThing } from './edit-line.ts';
+import type { EditResult, LineThing } from './edit-result.ts';
 import { keptPlace, notesAbout } from './edit-things.ts';
 import type { ToolContext } from './tool-types.ts';
 

@@ -1,24 +1,16 @@
-import { lineText } from '#client/text/desk-forms.ts';
-import { editLabels, editRefusals } from '#client/text/editing-lines.ts';
+import { editRefusals } from '#client/text/editing-lines.ts';
 import type { SheetPx } from '#shared/compute/frames.ts';
-import { reversed } from '#shared/compute/geometry/edit-lines/join.ts';
-import { smoothed } from '#shared/compute/geometry/edit-lines/smooth.ts';
-import { type LineKind, singleOf } from '#shared/contract/document.ts';
 import type { EditEvent, LineOp } from '../model/pending-edit.ts';
 import type { Sketch } from '../model/tool-overlay.ts';
 import { everything, toggleAt } from './choose-several.ts';
+import { changeKind, removeChosen, smooth, turnRound } from './edit-at-once.ts';
 import { copyChosen, duplicate, paste } from './edit-copy.ts';
 import { joinLines } from './edit-join.ts';
-import {
-  type EditResult,
-  editAt,
-  isRefusal,
-  type LineThing,
-  splitAtVertex,
-  withPoints,
-} from './edit-line.ts';
+import { editAt } from './edit-line.ts';
 import { moveBy, nudge, settleNudge } from './edit-move.ts';
-import { chosenThings, isLineThing, putAll, refusalToChange, refused } from './edit-things.ts';
+import { type EditResult, isRefusal, type LineThing } from './edit-result.ts';
+import { splitAtVertex } from './edit-split.ts';
+import { chosenThings, isLineThing, refusalToChange, refused } from './edit-things.ts';
 import {
   AT_REST,
   type Modifiers,
@@ -27,9 +19,6 @@ import {
   type ToolState,
   type ToolStep,
 } from './tool-types.ts';
-
-/** The tracing accuracy that smoothing holds to where none is stated, pixels. */
-const UNSAID_ACCURACY_PX = 1;
 
 /** One step asked for by a key, a bar or a form about what is chosen, whatever tool is in hand. */
 export function editStep(state: ToolState, event: EditEvent, context: ToolContext): ToolStep {
@@ -69,31 +58,6 @@ function withSelectTool(context: ToolContext, step: ToolStep): ToolStep {
   return { ...step, commands: [{ do: 'tool', tool: 'select', boundary: null }, ...step.commands] };
 }
 
-/** Removes all that is chosen, as one step. */
-export function removeChosen(context: ToolContext): ToolStep {
-  const refusal = refusalToChange(context);
-  if (refusal !== null) return refused(refusal);
-  const things = chosenThings(context);
-  const ops = things.map(({ id }) => ({ op: 'remove' as const, entityId: id }));
-  return rest({ do: 'run', label: editLabels.removed(things.map(({ value }) => value)), ops });
-}
-
-/** Gives all chosen lines one kind; what only made sense for the old one goes. */
-function changeKind(line: LineKind, context: ToolContext): ToolStep {
-  const refusal = refusalToChange(context);
-  if (refusal !== null) return refused(refusal);
-  const changed = chosenThings(context)
-    .filter(isLineThing)
-    .filter(({ value }) => value.line !== line)
-    .map(({ id, value }) => ({ id, value: { ...value, line, water: null, head: null, drops: null } }));
-  if (changed.length === 0) return rest();
-  return rest({
-    do: 'run',
-    label: editLabels.kind(changed.length, lineText.kinds[line]),
-    ops: putAll(changed),
-  });
-}
-
 function lineOp(op: LineOp, context: ToolContext): ToolStep {
   if (context.readOnly) return refused(editRefusals.readOnly);
   if (context.draft !== null) return refused(editRefusals.drawing);
@@ -116,23 +80,6 @@ function lineOp(op: LineOp, context: ToolContext): ToolStep {
     return carriedOut(splitAtVertex(line, vertex, context));
   }
   return withSelectTool(context, rest({ do: 'ask', edit: { op, lineId: line.id } }));
-}
-
-function turnRound(lines: readonly LineThing[]): ToolStep {
-  const turned = lines.map(({ id, value }) => ({ id, value: { ...value, points: reversed(value.points) } }));
-  return rest({ do: 'run', label: editLabels.reverse(lines.map(({ value }) => value)), ops: putAll(turned) });
-}
-
-/** Takes the tremor off all chosen lines that have one, within the tracing accuracy. */
-function smooth(lines: readonly LineThing[], context: ToolContext): ToolStep {
-  const stated = singleOf(context.document, 'netCount')?.value.tracingAccuracyPx ?? 0;
-  const tolerance = stated > 0 ? stated : UNSAID_ACCURACY_PX;
-  const calmed = lines.flatMap(({ id, value }): LineThing[] => {
-    const { points, farthest } = smoothed(value.points, tolerance);
-    return farthest < 0.01 ? [] : [{ id, value: withPoints(value, points) }];
-  });
-  if (calmed.length === 0) return refused(editRefusals.nothingToSmooth);
-  return rest({ do: 'run', label: editLabels.smooth(calmed.map(({ value }) => value)), ops: putAll(calmed) });
 }
 
 /** Answers what was asked for with a click; a refusal asks on. */
