@@ -48,3 +48,19 @@ describe('the texts of the interface', () => {
     expect(outside).toEqual([]);
   });
 });
+
+describe('the figures of the interface', () => {
+  const source = path.resolve(folder, '..');
+  const files = readdirSync(source, { recursive: true, encoding: 'utf8' }).filter(
+    (name) => /\.tsx?$/.test(name) && name !== path.join('lib', 'figures.ts'),
+  );
+
+  it('have the decimal mark of the screen: nothing writes them past lib/figures', () => {
+    const past = files.filter((name) =>
+      /^import (?!type ).*#shared\/text\/number-text\.ts/m.test(
+        readFileSync(path.join(source, name), 'utf8'),
+      ),
+    );
+    expect(past).toEqual([]);
+  });
+});

@@ -1,10 +1,10 @@
+import { plainText } from '#client/lib/figures.ts';
 import { shortName } from '#client/lib/initials.ts';
 import { deskPaletteText } from '#client/text/desk-palette.ts';
 import { presenceText as text } from '#client/text/presence.ts';
 import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { PresentDesk } from '#shared/contract/presence.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
-import { plainText } from '#shared/text/number-text.ts';
 import type { Guides } from '../model/guides.ts';
 
 type Shown = { document: FlowNetDocument; reading: NetReading | null };

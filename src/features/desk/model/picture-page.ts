@@ -163,7 +163,9 @@ function titleCells(
   top: number,
   measure: Measure,
 ): { set: PicturePage['cells']; height: number } {
-  const columns = Math.max(1, Math.round(inner / CELL_WIDTH));
+  const rows = Math.ceil(cells.length / Math.max(1, Math.round(inner / CELL_WIDTH)));
+  // Spread evenly, so that no row is left with a cell or two.
+  const columns = Math.max(1, Math.ceil(cells.length / Math.max(1, rows)));
   const width = inner / columns;
   const set: Array<PicturePage['cells'][number]> = [];
   let y = top;
