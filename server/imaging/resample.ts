@@ -20,6 +20,8 @@ export async function resampledRows(
   widthPx: number,
   heightPx: number,
 ): Promise<PixelRows> {
+  const shift = wholeShift(toBase);
+  if (shift !== null) return base.window(shift[0], shift[1] + top, widthPx, heightPx);
   const { channels } = base;
   const band: PixelRows = {
     data: new Uint8Array(widthPx * heightPx * channels).fill(BESIDE),
@@ -38,6 +40,12 @@ export async function resampledRows(
       await resamplePiece(band, piece, top, toBase, base);
     }
   return band;
+}
+
+/** Whole pixels by which a picture is only cut out of the base raster; null where it is turned or slants. */
+function wholeShift([a, b, c, d, e, f, g, h, i]: ProjectiveMap): readonly [x: number, y: number] | null {
+  const isShift = a === 1 && b === 0 && d === 0 && e === 1 && g === 0 && h === 0 && i === 1;
+  return isShift && Number.isInteger(c) && Number.isInteger(f) ? [c, f] : null;
 }
 
 /** A piece that sees very much of the base, far off in a slanting view, is worked on in quarters. */
