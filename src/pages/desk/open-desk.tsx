@@ -67,7 +67,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
   const checks = useDeskChecks(store);
   const notice = useNotice();
   const flush = async () => saving?.flush();
-  const presence = useDeskPresence(netId, store);
+  const presence = useDeskPresence(netId, session);
   useDeskLive(netId, session);
   useSavingMoments(saving);
 

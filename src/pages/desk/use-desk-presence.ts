@@ -1,7 +1,7 @@
 import { useEffect, useState } from 'react';
 import { v7 as newUuid } from 'uuid';
 import { presenceApi } from '#client/features/desk/api/presence-api.ts';
-import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
+import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
 import { type Presence, startPresence } from '#client/features/desk/saving/presence.ts';
 import { useLive } from '#client/lib/use-live.ts';
 
@@ -11,7 +11,7 @@ const LOOK_MS = 30_000;
 const SIGNS = ['pointermove', 'pointerdown', 'keydown'] as const;
 
 /** Says that this desk is open, for as long as somebody works at it, and knows who else is on the net. */
-export function useDeskPresence(netId: string, store: DeskStore): Presence | null {
+export function useDeskPresence(netId: string, { store, saving }: DeskSession): Presence | null {
   const [presence, setPresence] = useState<Presence | null>(null);
 
   useEffect(() => {
@@ -19,12 +19,14 @@ export function useDeskPresence(netId: string, store: DeskStore): Presence | nul
     const started = startPresence(store, clientId, presenceApi(netId, clientId), Date.now);
     setPresence(started);
     const endMoments = followAttention((away) => started.setAway(away));
+    const endOthers = started.others.subscribe((others) => saving?.setWatched(others.length > 0));
     return () => {
       endMoments();
+      endOthers();
       started.stop();
       setPresence(null);
     };
-  }, [netId, store]);
+  }, [netId, store, saving]);
 
   useLive((message) => {
     const concerned = message.type === 'hello' || (message.type === 'presence' && message.netId === netId);

@@ -37,6 +37,9 @@ export interface SavingState extends SaveFacts {
   detail: string;
 }
 
+/** Others see a change within two seconds, of which this is the part that is waited on purpose. */
+const WATCHED_MS = 250;
+
 export type ConflictChoice = 'mine' | 'theirs' | 'both';
 
 export interface Saving {
@@ -47,6 +50,8 @@ export interface Saving {
   /** Settles a conflict; `both` lets the other version stand and puts this person's beside it as a thing of its own. */
   settle(entityId: string, keep: ConflictChoice): void;
   forgetRefused(): void;
+  /** Sends changes sooner while somebody else has the net open and waits to see them. */
+  setWatched(watched: boolean): void;
   /** Ends sending and waits until what is left is on the disk. */
   stop(): Promise<void>;
 }
@@ -60,6 +65,7 @@ export function startSaving(deps: SavingDeps): Saving {
   let failures = 0;
   let pumping: Promise<void> | null = null;
   let stopped = false;
+  let watched = false;
   let timer: ReturnType<typeof setTimeout> | null = null;
 
   const state = createStore<SavingState>(() => ({
@@ -146,7 +152,7 @@ export function startSaving(deps: SavingDeps): Saving {
   if (deps.kept) queue = restoreQueue(desk, deps.kept);
   const endCommands = desk.onCommand((command: DeskCommand) => {
     change(enqueue(queue, command));
-    sendIn(AUTOSAVE_MS);
+    sendIn(watched ? WATCHED_MS : AUTOSAVE_MS);
   });
   change(queue);
   if (queue.batches.length > 0) sendIn(0);
@@ -167,6 +173,9 @@ export function startSaving(deps: SavingDeps): Saving {
       if (choice === 'both' && mine !== null) keepAsCopy(desk, mine);
     },
     forgetRefused: () => change(forgetRefused(queue)),
+    setWatched(next) {
+      watched = next;
+    },
     async stop() {
       stopped = true;
       if (timer) clearTimeout(timer);

@@ -82,6 +82,19 @@ describe('saving', () => {
     expect(server.held.get(LINE_A)).toEqual({ version: 2, value: lineTo(2) });
   });
 
+  it('sends a change sooner while somebody else has the net open', async () => {
+    const server = serverHolding({ [LINE_A]: lineTo(1) });
+    const { desk, saving } = await open({ [LINE_A]: lineTo(1) }, async (batch) => server.answer(batch));
+    saving.setWatched(true);
+    move(desk, 2);
+    await passMs(300);
+    expect(server.received).toHaveLength(1);
+    saving.setWatched(false);
+    move(desk, 3);
+    await passMs(300);
+    expect(server.received).toHaveLength(1);
+  });
+
   it('keeps the work while there is no connection and sends it later, in order', async () => {
     const server = serverHolding({ [LINE_A]: lineTo(1) });
     let online = false;
