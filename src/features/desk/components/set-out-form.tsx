@@ -1,5 +1,6 @@
 import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
+import { CheckField } from '#client/components/field.tsx';
 import { plainText, signedText } from '#client/lib/figures.ts';
 import { setOutText as text } from '#client/text/desk-forms.ts';
 import { placingText as placing } from '#client/text/set-out.ts';
@@ -98,18 +99,14 @@ export function SetOutForm({
 function TakesCrossings() {
   const on = useStore(settingOutAids, (state) => state.takesCrossings);
   return (
-    <label className="mt-2 flex items-start gap-2">
-      <input
-        type="checkbox"
-        className="mt-1"
+    <div className="mt-2">
+      <CheckField
+        label={placing.takesCrossings}
+        hint={placing.takesCrossingsHint}
         checked={on}
         onChange={(event) => changeSettingOutAids({ takesCrossings: event.target.checked })}
       />
-      <span>
-        {placing.takesCrossings}
-        <span className="block text-sm text-ink-2">{placing.takesCrossingsHint}</span>
-      </span>
-    </label>
+    </div>
   );
 }
 
