@@ -140,7 +140,7 @@ export function steppedOnScreen(view: Viewport, from: SheetPx, dx: number, dy: n
 }
 
 /** The step on the sheet that goes in a direction as it is seen in the middle of the view, so many sheet pixels long. */
-export function stepAsSeen(view: Viewport, dx: number, dy: number): readonly [number, number] {
+export function stepAsSeen(view: Viewport, dx: number, dy: number): [number, number] {
   if (view.seenAs === undefined) return [dx, dy];
   const middle = toSheet(view, screenPx(view.widthPx / 2, view.heightPx / 2));
   const to = steppedOnScreen(view, middle, dx, dy);
