@@ -1,8 +1,7 @@
 import { OPS, type PDFPageProxy } from 'pdfjs-dist/legacy/build/pdf.mjs';
-import { DEFAULT_DPI, MAX_DPI, MAX_PDF_PIXELS } from '#shared/contract/limits.ts';
+import { DEFAULT_DPI, MAX_DPI, MAX_PDF_PIXELS, MAX_PIXELS } from '#shared/contract/limits.ts';
+import { mostDpi } from '#shared/contract/page-dpi.ts';
 
-/** Sides a canvas takes. */
-const MAX_SIDE_PX = 32_000;
 /** A raster covering less of the page than this is a stamp or a logo, not the drawing. */
 const MAIN_SHARE = 0.5;
 
@@ -24,9 +23,8 @@ export function chooseDpi(
   asked?: number,
 ): ChosenDpi {
   const wanted = asked ?? Math.min(MAX_DPI, Math.max(DEFAULT_DPI, Math.round(scanDpi ?? 0)));
-  const byArea = 72 * Math.sqrt(MAX_PDF_PIXELS / (widthPt * heightPt));
-  const bySide = (72 * MAX_SIDE_PX) / Math.max(widthPt, heightPt);
-  const most = Math.floor(Math.min(byArea, bySide));
+  // Drawn by bands a page needs no more memory for more pixels, but time: only who asks for them waits for them.
+  const most = mostDpi(widthPt / 72, heightPt / 72, asked ? MAX_PIXELS : MAX_PDF_PIXELS);
   if (wanted <= most) return { dpi: wanted, note: '' };
   const dpi = Math.max(1, most);
   return {

@@ -3,6 +3,7 @@ import { notFound } from '#server/errors/app-error.ts';
 import { defineRoute, type RouteRecord } from '#server/http/route-record.ts';
 import { sendStored } from '#server/http/send-stored.ts';
 import { withReceivedFile } from '#server/http/upload.ts';
+import { drawSheetAgain } from '#server/services/draw-again-service.ts';
 import { getDrawing, listDrawings, originalOf } from '#server/services/drawing-queries.ts';
 import { createDrawingService } from '#server/services/drawing-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
@@ -15,6 +16,7 @@ import {
   drawingPatch,
   uploadQuery,
 } from '#shared/contract/drawings.ts';
+import { drawAgainInput } from '#shared/contract/page-dpi.ts';
 
 const drawingParams = z.object({ drawingId: id });
 const onDrawing = <const A extends 'dam.read' | 'drawing.edit' | 'drawing.archive'>(action: A) =>
@@ -75,6 +77,21 @@ export const drawingRoutes: RouteRecord[] = [
     reply: drawingDto,
     handle: async ({ deps, params, actor }) =>
       inTransaction(deps, (tx) => createDrawingService(tx).prepareAgain(params.drawingId, actor)),
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/sheets/:sheetId/draw-again',
+    access: { who: 'dam', action: 'drawing.edit', target: 'sheet' },
+    params: z.object({ sheetId: id }),
+    body: drawAgainInput,
+    reply: drawingDto,
+    handle: async ({ deps, params, body, actor }) => {
+      const { drawingId, oldTiles } = await inTransaction(deps, (tx) =>
+        drawSheetAgain(tx, params.sheetId, body.dpi, actor),
+      );
+      await deps.storage.deletePrefix(oldTiles);
+      return getDrawing(deps.db.manager, drawingId);
+    },
   }),
   defineRoute({
     method: 'post',

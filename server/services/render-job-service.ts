@@ -18,6 +18,8 @@ export interface HeldJob {
   runId: string;
   attempts: number;
   drawing: DrawingEntity;
+  /** Dots per inch for pages of vectors; null = the usual. */
+  askedDpi: number | null;
 }
 
 type NewSheet = Omit<SheetEntity, 'createdAt' | 'drawingId'>;
@@ -67,6 +69,12 @@ export function createRenderJobService({
       ['drawing.failed', `${drawingTitle(job.drawing)} could not be prepared`],
     );
 
+  async function queueAnew(jobId: string, askedDpi: number | null): Promise<void> {
+    const anew = { ...waiting, attempts: 0, message: '', finishedAt: null, askedDpi };
+    await manager.update(RenderJobEntity, { id: jobId }, anew);
+    await jobs.enqueue(manager, 'render-drawing', jobId);
+  }
+
   /** What a run before this one has entered of the same page is replaced. */
   async function enter(job: HeldJob, sheet: NewSheet): Promise<void> {
     const row = { ...sheet, drawingId: job.drawing.id };
@@ -88,7 +96,7 @@ export function createRenderJobService({
       const held = { state: 'running', runId, attempts, leaseUntil: leaseUntil(), message: '' } as const;
       await manager.update(RenderJobEntity, { id: jobId }, held);
       const drawing = await manager.findOneByOrFail(DrawingEntity, { id: row.drawingId });
-      const job = { jobId, runId, attempts, drawing };
+      const job = { jobId, runId, attempts, drawing, askedDpi: row.askedDpi };
       // A file that ends the whole server each time must not do so for ever.
       if (attempts > MOST_ATTEMPTS) {
         await giveUp(job);
@@ -166,10 +174,19 @@ export function createRenderJobService({
       const hasEnded = row !== null && row.state !== 'waiting' && row.state !== 'running';
       // What was left out is told by the message of a job that is done.
       if (!hasEnded || row.message === '') return null;
-      const anew = { ...waiting, attempts: 0, message: '', finishedAt: null };
-      await manager.update(RenderJobEntity, { id: row.id }, anew);
-      await jobs.enqueue(manager, 'render-drawing', row.id);
+      await queueAnew(row.id, null);
       return row.id;
+    },
+
+    /** Queues a job that has ended, for pages of vectors at a chosen resolution. False while it has not ended. */
+    async startAtDpi(drawingId: string, askedDpi: number): Promise<boolean> {
+      const row = await manager.findOne(RenderJobEntity, {
+        where: { drawingId },
+        lock: { mode: 'pessimistic_write' },
+      });
+      if (row === null || row.state === 'waiting' || row.state === 'running') return false;
+      await queueAnew(row.id, askedDpi);
+      return true;
     },
 
     /** Gives the job back unharmed, because the server stops; the attempt does not count. */

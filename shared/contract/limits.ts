@@ -32,6 +32,10 @@ export const MAX_PDF_PIXELS = 140_000_000;
 export const MAX_PAGES = 300;
 /** Dots per inch a PDF page is drawn at when no scan in it is finer; keeps a 0.13 mm line at 1.5 pixels. */
 export const DEFAULT_DPI = 300;
+/** Dots per inch below which a pen's line is no longer a pixel wide. */
+export const MIN_DPI = 150;
+/** Pixels along one side of a page that is drawn. */
+export const MAX_DRAWN_SIDE_PX = 32_000;
 /** Dots per inch above which more show nothing that a pen drew. */
 export const MAX_DPI = 600;
 /** Seconds one page may take to render. */

@@ -3,7 +3,7 @@ import { RenderJobEntity } from '#server/entities/drawing-entity.ts';
 import { refusals } from '#server/imaging/refusal.ts';
 import { createRenderProcess, type RenderProcess } from '#server/imaging/render-process.ts';
 import { createRenderDrawingHandler } from '#server/jobs/handlers/render-drawing.ts';
-import { pdfDrawing } from '#tests/support/drawing-files.ts';
+import { pdfDrawing, pngDrawing } from '#tests/support/drawing-files.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
@@ -115,5 +115,53 @@ describe('the first view of a sheet', () => {
     const whole = (await drawing(drawingId)).sheets[0];
     expect(whole).toMatchObject({ id: sheets[0].id, note: '' });
     expect(whole.tiles.readyZoom).toBeUndefined();
+  });
+});
+
+describe('a page of vectors', () => {
+  const done = async (dpi: number, sheetId: string, who = caller) =>
+    who.post(`/sheets/${sheetId}/draw-again`).send({ dpi });
+
+  async function preparedPage(bytes: Buffer, name: string) {
+    const { body } = await caller
+      .post(`/dams/${damId}/drawings?again=yes`)
+      .attach('file', bytes, name)
+      .expect(201);
+    const { id: jobId } = await app.db.getRepository(RenderJobEntity).findOneByOrFail({ drawingId: body.id });
+    await createRenderDrawingHandler(app.deps)(jobId, never);
+    const [sheet] = (await drawing(body.id)).sheets;
+    return { drawingId: body.id as string, jobId, sheet };
+  }
+
+  it('is drawn again at the resolution chosen, as the same sheet under other tiles', async () => {
+    const { drawingId, jobId, sheet } = await preparedPage(
+      pdfDrawing([{ width: 144, height: 72 }]),
+      'plan.pdf',
+    );
+    expect(sheet).toMatchObject({ widthPx: 600, heightPx: 300, dpi: 300, isDrawn: true });
+    expect((await done(450, sheet.id)).status).toBe(200);
+    expect((await done(450, sheet.id)).status).toBe(404);
+    await createRenderDrawingHandler(app.deps)(jobId, never);
+    const [again] = (await drawing(drawingId)).sheets;
+    // 2 in × 1 in.
+    expect(again).toMatchObject({ id: sheet.id, widthPx: 900, heightPx: 450, dpi: 450 });
+    await caller.get(`/sheets/${sheet.id}/tiles/${again.tiles.rendition}/0/0_0`).expect(200);
+    await caller.get(`/sheets/${sheet.id}/tiles/base/0/0_0`).expect(404);
+    expect((await done(300, sheet.id)).status).toBe(200);
+  });
+
+  it('stays as it is once a section lies on it, out of the limits, and when it is a scan', async () => {
+    const { sheet } = await preparedPage(pdfDrawing([{ width: 144, height: 72 }]), 'plan.pdf');
+    expect((await done(100, sheet.id)).status).toBe(400);
+    expect((await done(601, sheet.id)).status).toBe(400);
+    await caller
+      .post(`/sheets/${sheet.id}/sections`)
+      .send({ id: '01890000-0000-7000-8000-00000000f003', name: 'C–C', chainage: '', frame: null })
+      .expect(201);
+    const refused = await done(450, sheet.id);
+    expect(refused.status).toBe(409);
+    expect(refused.body.title).toBe('Something lies on this sheet');
+    const scan = await preparedPage(await pngDrawing({ seed: 77 }), 'scan.png');
+    expect((await done(450, scan.sheet.id)).body.title).toBe('This page is a scan');
   });
 });

@@ -109,15 +109,18 @@ function startRun(job: HeldJob, outer: AbortSignal, rows: Rows, deps: AppDeps, r
     await refuseFullDisk();
     const { pageNumber } = page;
     const outFolder = path.join(folder, String(pageNumber));
-    const own = { id: sheetIdOf(job.drawing.id, pageNumber), pageNumber, rendition: BASE };
+    // Under a name of its own, because browsers keep tiles for ever.
+    const rendition = job.askedDpi === null ? BASE : `${BASE}-${job.askedDpi}`;
+    const own = { id: sheetIdOf(job.drawing.id, pageNumber), pageNumber, rendition };
     const firstViews: Promise<void>[] = [];
     try {
-      const order = { file, kind, pageNumber, outFolder };
+      const dpi = job.askedDpi === null ? {} : { dpi: job.askedDpi };
+      const order = { file, kind, pageNumber, outFolder, ...dpi };
       const onProgress = everyWhile(PROGRESS_MS, (share) => rows((jobs) => jobs.setProgress(job, share)));
       const onFirstView = (view: FirstView) => void firstViews.push(showFirstView(own, view));
       const drawn = await renderer.renderSheet(order, { signal, onProgress, onFirstView });
       await Promise.all(firstViews);
-      await deps.storage.putTree(tilePrefix(own.id, BASE), outFolder);
+      await deps.storage.putTree(tilePrefix(own.id, rendition), outFolder);
       const sheet = { ...own, ...drawn, isDrawn: drawn.isDrawn ?? false, readyZoom: null };
       const isOurs = await rows((jobs) => jobs.addSheet(job, sheet, pagesDone));
       if (!isOurs) throw new LostLease('the job has been taken over');
@@ -126,7 +129,7 @@ function startRun(job: HeldJob, outer: AbortSignal, rows: Rows, deps: AppDeps, r
       await Promise.all(firstViews);
       if (!(error instanceof RenderRefusal)) throw error;
       const isGone = await rows((jobs) => jobs.withdraw(own.id, error.message));
-      if (isGone) await deps.storage.deletePrefix(tilePrefix(own.id, BASE));
+      if (isGone) await deps.storage.deletePrefix(tilePrefix(own.id, rendition));
       return error;
     }
   }

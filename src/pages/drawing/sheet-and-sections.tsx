@@ -5,6 +5,8 @@ import { useNotice } from '#client/components/notice.tsx';
 import { Empty, Panel } from '#client/components/panel.tsx';
 import { ShownBy } from '#client/features/clean-up/components/shown-by.tsx';
 import { useCreateSection, useEditSection } from '#client/features/drawings/api/drawing-mutations.ts';
+import { isUnderWay } from '#client/features/drawings/api/drawing-queries.ts';
+import { DrawAgain } from '#client/features/drawings/components/draw-again.tsx';
 import type { Frame } from '#client/features/drawings/components/frame.ts';
 import { PagePicker } from '#client/features/drawings/components/page-picker.tsx';
 import { SectionForm } from '#client/features/drawings/components/section-form.tsx';
@@ -39,6 +41,13 @@ export function SheetAndSections({ drawing, sheet, can, onCleanUp }: SheetAndSec
   const framed = sections.filter(
     (section) => section.archivedAt === null && section.id !== framing?.section?.id,
   );
+  // Once something lies on the sheet its pixels stay what they are.
+  const canDrawAgain =
+    sheet.isDrawn === true &&
+    all.length === 0 &&
+    sheet.shown === undefined &&
+    !isUnderWay(drawing) &&
+    can.includes('drawing.edit');
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-4 lg:grid-cols-[minmax(0,1fr)_360px]">
       <Panel
@@ -58,6 +67,7 @@ export function SheetAndSections({ drawing, sheet, can, onCleanUp }: SheetAndSec
       >
         <PagePicker sheets={drawing.sheets} chosen={sheet} />
         {sheet.shown ? <ShownBy sheetId={sheet.id} canChange={can.includes('drawing.edit')} /> : null}
+        {canDrawAgain && sheet.dpi !== null ? <DrawAgain sheet={sheet} drawnDpi={sheet.dpi} /> : null}
         {sheet.note ? (
           <p className="m-0 border-b border-rule bg-doubt px-3.5 py-2 text-attention">{sheet.note}</p>
         ) : null}

@@ -26,6 +26,13 @@ describe('the resolution of a PDF page', () => {
     expect(long.dpi).toBe(160);
   });
 
+  it('is what was asked for as far as a scan of that size could be shown', () => {
+    // A0 at 600 dpi has 558 million pixels, of the 600 million a scan may have.
+    expect(chooseDpi(points(1189), points(841), null, 600)).toEqual({ dpi: 600, note: '' });
+    // 600 million pixels on 3,600 square inches.
+    expect(chooseDpi(60 * INCH, 60 * INCH, null, 600).dpi).toBe(408);
+  });
+
   it('is never below one, whatever the page', () => {
     expect(chooseDpi(1e9, 1e9, null).dpi).toBe(1);
   });

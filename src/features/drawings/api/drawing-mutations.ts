@@ -40,6 +40,11 @@ export function useEditDrawing(drawingId: string) {
 export const usePrepareAgain = (drawingId: string) =>
   useDrawingsWrite(() => sendJson('POST', `/drawings/${drawingId}/prepare-again`, drawingDto));
 
+export const useDrawAgain = (sheetId: string) =>
+  useDrawingsWrite((dpi: number) =>
+    sendJson('POST', `/sheets/${sheetId}/draw-again`, drawingDto, { body: { dpi } }),
+  );
+
 export const useCreateSection = (sheetId: string) =>
   useDrawingsWrite((fields: SectionFields) =>
     sendJson('POST', `/sheets/${sheetId}/sections`, sectionDto, { body: { id: uuidv7(), ...fields } }),
