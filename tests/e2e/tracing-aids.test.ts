@@ -9,9 +9,10 @@ import { allSaved } from '#tests/support/journey/desk-steps.ts';
 import { type JourneyWorld, openWorld } from '#tests/support/journey/journey-world.ts';
 import { openNetFromFile } from '#tests/support/journey/net-from-file.ts';
 
-/** The basic parabola on an empty sheet, made here: its base is level, so that a right angle to it is upright. */
-const { net, pxPerUnit } = EXACT_NETS[0]!;
+/** The basic parabola on a small empty sheet, made here: its base is level, and a right angle to it upright. */
+const { net } = EXACT_NETS[0]!;
 const BASE = 98;
+const SHEET = { widthPx: 1800, heightPx: 1200, dpi: 100 };
 
 let world: JourneyWorld;
 let page: Page;
@@ -20,7 +21,10 @@ let hand: DeskHand;
 beforeAll(async () => {
   world = await openWorld();
   page = await world.pageOf(world.engineer);
-  const document = exactNetDocument(net, { pxPerUnit, turnDeg: 0 });
+  // The empty sheet has to be rendered first, which waits its turn on a busy machine.
+  page.setDefaultTimeout(60_000);
+  const drawn = exactNetDocument(net, { pxPerUnit: 40, turnDeg: 0, centre: [900, 600] });
+  const document = { ...drawn, sheet: SHEET };
   await openNetFromFile(world, page, document, { section: 'A–A', loadCase: 'Full supply' });
   hand = await takeDesk(page);
 });
