@@ -5,14 +5,6 @@ import { useStore } from 'zustand';
 import { useNotice } from '#client/components/notice.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
-import { carriedGuides } from '#client/features/carry-across/carried-guides.ts';
-import { matchingOf } from '#client/features/carry-across/matching.ts';
-import {
-  createMatchingStore,
-  markedPlaces,
-  removePlace,
-} from '#client/features/carry-across/matching-store.ts';
-import { useCarryAcross } from '#client/features/carry-across/use-carry-across.ts';
 import { netQuery } from '#client/features/desk/api/net-queries.ts';
 import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
 import { paths } from '#client/lib/paths.ts';
@@ -20,10 +12,14 @@ import { carryAcrossText as text } from '#client/text/carry-across.ts';
 import { drawingName } from '#client/text/drawings.ts';
 import type { MatchShape, SheetMatch } from '#shared/compute/carry-across/match-sheets.ts';
 import type { DrawingDto, SectionDto, SheetDto } from '#shared/contract/drawings.ts';
+import { carriedGuides } from './carried-guides.ts';
 import { CarryForm } from './carry-form.tsx';
 import { MatchFacts } from './match-facts.tsx';
+import { matchingOf } from './matching.ts';
 import { MatchingSheet } from './matching-sheet.tsx';
+import { createMatchingStore, markedPlaces, removePlace } from './matching-store.ts';
 import { PlacesTable } from './places-table.tsx';
+import { useCarryAcross } from './use-carry-across.ts';
 
 interface CarryingProps {
   from: { drawing: DrawingDto; section: SectionDto; sheet: SheetDto };

@@ -1,5 +1,4 @@
 import { SelectField } from '#client/components/field.tsx';
-import type { Matching } from '#client/features/carry-across/matching.ts';
 import { fixedText, plainText } from '#client/lib/figures.ts';
 import { carryAcrossText as text } from '#client/text/carry-across.ts';
 import {
@@ -8,6 +7,7 @@ import {
   scaleOf,
   turnOf,
 } from '#shared/compute/carry-across/match-sheets.ts';
+import type { Matching } from './matching.ts';
 
 interface MatchFactsProps {
   matching: Matching;

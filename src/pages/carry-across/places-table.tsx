@@ -1,10 +1,10 @@
 import { Button } from '#client/components/button.tsx';
 import { Empty } from '#client/components/panel.tsx';
 import { Cell, HeadCell, Table } from '#client/components/table.tsx';
-import type { MarkedPlace } from '#client/features/carry-across/matching-store.ts';
 import { fixedText } from '#client/lib/figures.ts';
 import { carryAcrossText as text } from '#client/text/carry-across.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
+import type { MarkedPlace } from './matching-store.ts';
 
 interface PlacesTableProps {
   places: readonly MarkedPlace[];
