@@ -24,7 +24,11 @@ beforeAll(async () => {
   // The empty sheet has to be rendered first, which waits its turn on a busy machine.
   page.setDefaultTimeout(60_000);
   const drawn = exactNetDocument(net, { pxPerUnit: 40, turnDeg: 0, centre: [900, 600] });
-  const document = { ...drawn, sheet: SHEET };
+  const setOut = entitiesOf(drawn, 'setOut')[0]!;
+  // Without a side of its own the readout gives offsets with their sign, by which the hand finds its way.
+  const value = { ...setOut.value, upstream: null };
+  const entities = { ...drawn.entities, [setOut.id]: { id: setOut.id, version: 1, value } };
+  const document = { ...drawn, sheet: SHEET, entities };
   await openNetFromFile(world, page, document, { section: 'A–A', loadCase: 'Full supply' });
   hand = await takeDesk(page);
 });
