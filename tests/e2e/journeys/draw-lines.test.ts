@@ -32,23 +32,6 @@ async function rings(): Promise<Buffer> {
 
 beforeAll(async () => {
   world = await openWorld();
-  page = await world.pageOf(world.engineer);
-  const buffer = await rings();
-  const { data, info } = await sharp(buffer)
-    .greyscale()
-    .toColourspace('b-w')
-    .raw()
-    .toBuffer({ resolveWithObject: true });
-  scan = {
-    width: info.width,
-    dark: Uint8Array.from({ length: info.width * info.height }, (_, i) =>
-      data[i * info.channels]! < 128 ? 1 : 0,
-    ),
-  };
-  await page.goto(`/dams/${world.damId}`);
-  await addDrawings(page, [{ name: 'topotest.png', mimeType: 'image/png', buffer }]);
-  await openNewNet(page, 'topotest.png', { name: 'C–C', chainage: '12' });
-  hand = await takeDesk(page);
 });
 afterAll(() => world.close());
 
@@ -87,6 +70,26 @@ function along(points: readonly SheetPoint[]): Array<readonly [number, number]> 
 }
 
 describe('drawing on a real scan', () => {
+  it('its sheet is uploaded and opened on the desk', async () => {
+    page = await world.pageOf(world.engineer);
+    const buffer = await rings();
+    const { data, info } = await sharp(buffer)
+      .greyscale()
+      .toColourspace('b-w')
+      .raw()
+      .toBuffer({ resolveWithObject: true });
+    scan = {
+      width: info.width,
+      dark: Uint8Array.from({ length: info.width * info.height }, (_, i) =>
+        data[i * info.channels]! < 128 ? 1 : 0,
+      ),
+    };
+    await page.goto(`/dams/${world.damId}`);
+    await addDrawings(page, [{ name: 'topotest.png', mimeType: 'image/png', buffer }]);
+    await openNewNet(page, 'topotest.png', { name: 'C–C', chainage: '12' });
+    hand = await takeDesk(page);
+  });
+
   it('a contour is followed along its ink in three clicks, and the line lies on dark pixels', async () => {
     await hand.sheet.focus();
     await page.keyboard.press('f');
