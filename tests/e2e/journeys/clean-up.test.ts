@@ -153,7 +153,7 @@ describe('a crooked, grey scan', () => {
     await page.getByRole('button', { name: 'Scan', exact: true }).click();
     await liesOnInk(page, sheet);
     await page.context().close();
-  });
+  }, 240_000);
 });
 
 async function dragHandle(page: Page, picture: Locator, name: string, [x, y]: Place): Promise<void> {
