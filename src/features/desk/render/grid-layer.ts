@@ -4,7 +4,7 @@ import { decimalsOf, type GridLine, sectionGridOf } from '../model/section-grid.
 import type { Viewport } from '../model/viewport.ts';
 import { COLOURS } from './line-look.ts';
 
-const FONT = '12px "Public Sans", sans-serif';
+const FONT = '12px "Public Sans", "Liberation Sans", Arial, sans-serif';
 /** Pale on the sheet, with a halo of film, so that the grid is told from dark and from pale ground. */
 const LINE_ALPHA = 0.75;
 
