@@ -3,6 +3,7 @@ import { RenderJobEntity } from '#server/entities/drawing-entity.ts';
 import { refusals } from '#server/imaging/refusal.ts';
 import { createRenderProcess, type RenderProcess } from '#server/imaging/render-process.ts';
 import { createRenderDrawingHandler } from '#server/jobs/handlers/render-drawing.ts';
+import type { JobHandler } from '#server/jobs/jobs-port.ts';
 import { pdfDrawing, pngDrawing } from '#tests/support/drawing-files.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
@@ -119,6 +120,11 @@ describe('the first view of a sheet', () => {
 });
 
 describe('a page of vectors', () => {
+  /** As the server has it: one rendering process for one drawing after the other. */
+  let render: JobHandler;
+  beforeAll(() => {
+    render = createRenderDrawingHandler(app.deps);
+  });
   const done = async (dpi: number, sheetId: string, who = caller) =>
     who.post(`/sheets/${sheetId}/draw-again`).send({ dpi });
 
@@ -128,7 +134,7 @@ describe('a page of vectors', () => {
       .attach('file', bytes, name)
       .expect(201);
     const { id: jobId } = await app.db.getRepository(RenderJobEntity).findOneByOrFail({ drawingId: body.id });
-    await createRenderDrawingHandler(app.deps)(jobId, never);
+    await render(jobId, never);
     const [sheet] = (await drawing(body.id)).sheets;
     return { drawingId: body.id as string, jobId, sheet };
   }
@@ -141,7 +147,7 @@ describe('a page of vectors', () => {
     expect(sheet).toMatchObject({ widthPx: 600, heightPx: 300, dpi: 300, isDrawn: true });
     expect((await done(450, sheet.id)).status).toBe(200);
     expect((await done(450, sheet.id)).status).toBe(404);
-    await createRenderDrawingHandler(app.deps)(jobId, never);
+    await render(jobId, never);
     const [again] = (await drawing(drawingId)).sheets;
     // 2 in × 1 in.
     expect(again).toMatchObject({ id: sheet.id, widthPx: 900, heightPx: 450, dpi: 450 });
