@@ -32,10 +32,11 @@ export function LiveHelp({ store, views, source, touched }: LiveHelpProps) {
 }
 
 const AWAY_PX = 18;
-const CHARACTER_PX = 7.3;
+/** A wide guess: it only says on which side there is room. */
+const CHARACTER_PX = 6.6;
 const LINE_PX = 18;
 /** Under the readout of the pointer, where a finger seldom is. */
-const CORNER = { left: 12, top: 56 };
+const CORNER = { left: '12px', top: '56px' };
 /** Words over the scan are read by a halo of the paper's colour, as the marks on it are. */
 const HALO: CSSProperties = {
   textShadow: Array.from({ length: 5 }, () => '0 0 2px var(--color-film)').join(', '),
@@ -57,9 +58,10 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
   const height = words.length * LINE_PX;
   const width = CHARACTER_PX * Math.max(...words.map((line) => line.length));
   // Beside the pointer where there is room: to its right and below, else to the other side.
-  const left = x + AWAY_PX + width > view.widthPx ? x - AWAY_PX - width : x + AWAY_PX;
+  const flipped = x + AWAY_PX + width > view.widthPx && x - AWAY_PX - width > 0;
+  const left = flipped ? `calc(${Math.round(x - AWAY_PX)}px - 100%)` : `${Math.round(x + AWAY_PX)}px`;
   const top = y + AWAY_PX + height > view.heightPx ? y - AWAY_PX - height : y + AWAY_PX;
-  const place = touched ? CORNER : { left: Math.max(4, left), top: Math.max(4, top) };
+  const place = touched ? CORNER : { left, top: `${Math.round(Math.max(4, top))}px` };
   return (
     // Said aloud at every movement it would drown everything else; Q tells it.
     <div
@@ -68,8 +70,7 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
       className="pointer-events-none absolute top-0 left-0 whitespace-nowrap bg-film/80 text-sm font-semibold"
       style={{
         ...HALO,
-        minWidth: width,
-        transform: `translate(${Math.round(place.left)}px, ${Math.round(place.top)}px)`,
+        transform: `translate(${place.left}, ${place.top})`,
       }}
     >
       {words.map((line) => (
