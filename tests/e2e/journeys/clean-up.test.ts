@@ -83,8 +83,8 @@ async function distancesFromInk(page: Page, sheet: Locator): Promise<number[]> {
     const rows: number[] = [];
     for (let y = 0; y < trace.height; y += 1) {
       const [r, g, b] = trace.data.subarray((y * trace.width + x) * 3, (y * trace.width + x) * 3 + 3);
-      // The tone of a flow line, #a8472b.
-      if (Math.abs(r! - 0xa8) < 30 && Math.abs(g! - 0x47) < 30 && Math.abs(b! - 0x2b) < 30) rows.push(y);
+      // The red of a flow line, #a8472b, also where half of a pixel is paper, as along a level line.
+      if (r! - b! > 40 && r! - g! > 25) rows.push(y);
     }
     if (rows.length === 0) continue;
     const middle = rows.reduce((sum, y) => sum + y, 0) / rows.length;

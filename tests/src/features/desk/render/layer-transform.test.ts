@@ -3,7 +3,12 @@ import type { Viewport } from '#client/features/desk/model/viewport.ts';
 import { toScreen } from '#client/features/desk/model/viewport.ts';
 import { layerTransform } from '#client/features/desk/render/layer-transform.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
-import { mapOfFourPlaces, type ProjectiveMap, projectiveInverse, throughPlane } from '#shared/compute/plane-map.ts';
+import {
+  mapOfFourPlaces,
+  type ProjectiveMap,
+  projectiveInverse,
+  throughPlane,
+} from '#shared/compute/plane-map.ts';
 
 const size = { widthPx: 1000, heightPx: 800 };
 const view: Viewport = { zoom: 0.5, origin: sheetPx(100, 40), widthPx: 600, heightPx: 400 };
