@@ -8,7 +8,13 @@ import { ArtifactEntity, DecisionEntity, RevisionEntity } from './ledger-entity.
 import { OutboxMailEntity } from './mail-entity.ts';
 import { SnakeNamingStrategy } from './naming-strategy.ts';
 import { CommandBatchEntity, DocumentEntityRow, NetEntity, SectionEntity } from './net-entity.ts';
-import { NoteEntity, NoteEntryEntity } from './note-entity.ts';
+import {
+  NoteEntity,
+  NoteEntryEarlierEntity,
+  NoteEntryEntity,
+  NoteFileEntity,
+  NoteReadEntity,
+} from './note-entity.ts';
 import { PersonEntity, PersonTokenEntity, SessionEntity, SignInFailureEntity } from './person-entity.ts';
 import { NetPresenceEntity } from './presence-entity.ts';
 import { RenditionEntity } from './rendition-entity.ts';
@@ -31,6 +37,9 @@ export const entities = [
   CommandBatchEntity,
   NoteEntity,
   NoteEntryEntity,
+  NoteEntryEarlierEntity,
+  NoteFileEntity,
+  NoteReadEntity,
   RevisionEntity,
   DecisionEntity,
   ArtifactEntity,

@@ -17,6 +17,9 @@ export class NoteEntity {
   @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
   @ForeignKey(() => PersonEntity) @Column('uuid', { nullable: true }) closedBy!: string | null;
   @Column('timestamptz', { nullable: true }) closedAt!: Date | null;
+  /** The reviewer who wants it answered before anything is accepted; null for a note that does not hold anything up. */
+  @ForeignKey(() => PersonEntity) @Column('uuid', { nullable: true }) mustAnswerBy!: string | null;
+  @Column('timestamptz', { nullable: true }) mustAnswerAt!: Date | null;
 }
 
 /** The first text of a note or an answer to it. */
@@ -27,4 +30,44 @@ export class NoteEntryEntity {
   @ForeignKey(() => PersonEntity) @Column('uuid') authorId!: string;
   @Column('text') text!: string;
   @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
+  @Column('timestamptz', { nullable: true }) editedAt!: Date | null;
+  /** Those named with @ in it. */
+  @Column('uuid', { array: true, default: () => "'{}'" }) named!: string[];
+}
+
+/** What an entry said before it was changed; insert-only. */
+@Entity('note_entry_earlier')
+export class NoteEntryEarlierEntity {
+  @PrimaryColumn('uuid') id!: string;
+  @ForeignKey(() => NoteEntryEntity)
+  @Index('ix_note_entry_earlier_entry_id')
+  @Column('uuid')
+  entryId!: string;
+  @Column('text') text!: string;
+  @Column('timestamptz') replacedAt!: Date;
+}
+
+/** A photograph or file of an entry; without one, uploaded for an entry that is not written yet. */
+@Entity('note_file')
+export class NoteFileEntity {
+  @PrimaryColumn('uuid') id!: string;
+  @ForeignKey(() => NetEntity) @Column('uuid') netId!: string;
+  @ForeignKey(() => NoteEntryEntity)
+  @Index('ix_note_file_entry_id')
+  @Column('uuid', { nullable: true })
+  entryId!: string | null;
+  @Column('text') fileName!: string;
+  @Column('text') mediaType!: string;
+  @Column('bigint') byteSize!: string;
+  @Column('text') sha256!: string;
+  @ForeignKey(() => PersonEntity) @Column('uuid') uploadedBy!: string;
+  @Column('timestamptz') uploadedAt!: Date;
+}
+
+/** How many entries of a note, counted from its first, a person has read. */
+@Entity('note_read')
+export class NoteReadEntity {
+  @ForeignKey(() => NoteEntity) @PrimaryColumn('uuid') noteId!: string;
+  @ForeignKey(() => PersonEntity) @PrimaryColumn('uuid') personId!: string;
+  @Column('integer') entries!: number;
 }

@@ -15,6 +15,7 @@ import { FirstView1796126400100 } from './1796126400100-first-view.ts';
 import { Renditions1796126400110 } from './1796126400110-renditions.ts';
 import { DocumentVersion31796126400111 } from './1796126400111-document-version-3.ts';
 import { NetPresence1796126400120 } from './1796126400120-net-presence.ts';
+import { NoteThreads1796126400130 } from './1796126400130-note-threads.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -35,4 +36,5 @@ export const migrations = [
   Renditions1796126400110,
   DocumentVersion31796126400111,
   NetPresence1796126400120,
+  NoteThreads1796126400130,
 ];

@@ -13,6 +13,7 @@ import { sectionTitle } from '#shared/text/section-title.ts';
 import { revisionFacts } from './checking-letters.ts';
 import { writeEvent } from './event-writer.ts';
 import { queueMail } from './mail-service.ts';
+import { refuseUnanswered } from './must-answer.ts';
 import { lockNet } from './net-locks.ts';
 import { placeOfNet, refusePutAway } from './net-place.ts';
 import { personState } from './person-state.ts';
@@ -33,6 +34,7 @@ export function createRevisionService(deps: RevisionServiceDeps) {
     const refusal = await decisionRefusalFor(manager, row, actor.id);
     if (refusal) throw refused(refusal);
     refusePutAway(await placeOfNet(manager, row.netId));
+    if (input.decision !== 'returned') await refuseUnanswered(manager, row.netId);
     if (input.decision === 'returned' && input.note === '')
       throw invalidInput([
         { path: 'note', message: 'Say what has to be changed; a revision is returned with a note.' },
