@@ -10,6 +10,8 @@ const enPlacing = {
   onCrossing: 'crossing of drawn lines',
   across: 'Place across, px',
   down: 'Place down, px',
+  offSheet: (greatest: number) =>
+    `That place lies off the sheet, which goes from 0 to ${plainText(greatest)} px.`,
   movedPlace: (name: string) => `typed the place of ${name}`,
   offsetOnly: 'gives its offset only',
   elevationOnly: 'gives its elevation only',

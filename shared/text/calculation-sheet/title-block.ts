@@ -82,8 +82,21 @@ function scaleText({ unitSystem }: FlowNetDocument, { setOut }: NetReading): str
 
 function residualText({ unitSystem }: FlowNetDocument, { setOut }: NetReading): string {
   if (setOut.state !== 'fitted') return 'not set out';
-  if (setOut.residual === null) return 'none: no more points than the fit needs';
-  return `${fixedText(setOut.residual, 3)} ${unitNames(unitSystem).length}`;
+  const unit = unitNames(unitSystem).length;
+  const residual =
+    setOut.residual === null
+      ? 'none: no more points than the fit needs'
+      : `${fixedText(setOut.residual, 3)} ${unit}`;
+  return `${residual}${placeDoubtText(setOut.placeDoubt, unit)}`;
+}
+
+/** What the known points leave to a place, as on the desk: both coordinates in one length. Old readings tell none. */
+function placeDoubtText(placeDoubt: NetReading['setOut']['placeDoubt'], unit: string): string {
+  if (placeDoubt === null) return '';
+  const [middle, corner] = [placeDoubt.middle, placeDoubt.corner].map(({ offset, elevation }) =>
+    plainText(Math.hypot(offset, elevation), 2),
+  );
+  return `; places ± ${middle}${middle === corner ? '' : ` to ${corner}`} ${unit}`;
 }
 
 function headPerDropText({ unitSystem }: FlowNetDocument, { quantities }: NetReading): string {

@@ -8,6 +8,7 @@ import { methodChapter } from '#shared/text/calculation-sheet/method.ts';
 import { notesUntil } from '#shared/text/calculation-sheet/record.ts';
 import { lowered, powerText, raised, richRuns } from '#shared/text/calculation-sheet/rich-text.ts';
 import { sectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
+import { titleBlock } from '#shared/text/calculation-sheet/title-block.ts';
 import { withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
@@ -83,6 +84,35 @@ describe('the figure of the section', () => {
   it('turns the direction of flow with the drawing', () => {
     const sides = [turn(false).figure.flow, turn(true).figure.flow];
     expect(sides.sort()).toEqual(['left', 'right']);
+  });
+});
+
+describe('the title block', () => {
+  const document = exactNetDocument(EXACT_NETS[0]!.net, { pxPerUnit: EXACT_NETS[0]!.pxPerUnit });
+  const reading = readNet(document);
+  const residualOf = (of: typeof reading) =>
+    titleBlock({
+      document,
+      reading: of,
+      dam: { name: 'Harrow Fen Dam' },
+      section: { name: 'B–B', chainage: '212' },
+      drawing: { number: 'HF-114', title: 'Section', revision: 'C', sha256: 'ab12' },
+      netName: 'Steady',
+      jobNumber: '',
+      drawnBy: [],
+      status: { kind: 'draft', at: '2026-01-01T00:00:00.000Z' },
+    } as unknown as SheetSource).find(({ label }) => label === 'Residual')!.value;
+
+  it('tells what the known points leave to a place', () => {
+    const { middle, corner } = reading.setOut.placeDoubt!;
+    const length = (of: typeof middle) => Math.hypot(of.offset, of.elevation).toPrecision(2);
+    expect(residualOf(reading)).toMatch(/; places ± [\d.]+/);
+    expect(residualOf(reading)).toContain(`± ${Number(length(middle))}`);
+    expect(residualOf(reading)).toContain(`${Number(length(corner))} m`);
+  });
+
+  it('tells nothing of it for a reading of an engine that did not work it out', () => {
+    expect(residualOf({ ...reading, setOut: { ...reading.setOut, placeDoubt: null } })).not.toContain('±');
   });
 });
 

@@ -1,15 +1,20 @@
 import { placingText as text } from '#client/text/set-out.ts';
-import type { EntityOf, SheetPoint } from '#shared/contract/document.ts';
+import type { EntityOf, FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import { NeededFigure } from './form-fields.tsx';
+import { extentOf, withTyped } from './typed-place.ts';
+
+const AXES = [0, 1] as const;
 
 /** The place itself, which can be typed to a tenth of a pixel. */
 export function PlaceOnSheet({
   at,
+  sheet,
   disabled,
   onCommit,
 }: {
   at: SheetPoint;
+  sheet: FlowNetDocument['sheet'];
   disabled: boolean;
   onCommit: (at: SheetPoint) => void;
 }) {
@@ -17,18 +22,16 @@ export function PlaceOnSheet({
     <details className="mt-1 text-sm">
       <summary className="cursor-pointer text-ink-2 tabular-nums">{text.place(at[0], at[1])}</summary>
       <div className="mt-1 grid grid-cols-2 gap-2">
-        <NeededFigure
-          label={text.across}
-          value={at[0]}
-          disabled={disabled}
-          onCommit={(x) => onCommit([x, at[1]])}
-        />
-        <NeededFigure
-          label={text.down}
-          value={at[1]}
-          disabled={disabled}
-          onCommit={(y) => onCommit([at[0], y])}
-        />
+        {AXES.map((axis) => (
+          <NeededFigure
+            key={axis}
+            label={axis === 0 ? text.across : text.down}
+            value={at[axis]}
+            within={extentOf(sheet, axis)}
+            disabled={disabled}
+            onCommit={(px) => onCommit(withTyped(at, axis, px))}
+          />
+        ))}
       </div>
     </details>
   );

@@ -107,6 +107,7 @@ function KnownPointRow({
       <Residual id={id} reading={reading} unit={unit} />
       <PlaceOnSheet
         at={value.at}
+        sheet={document.sheet}
         disabled={disabled}
         onCommit={(at) => change({ at }, placing.movedPlace(name))}
       />
