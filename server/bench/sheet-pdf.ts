@@ -43,6 +43,7 @@ function contentOfNet(): SheetContent {
       sentBy: 'Sender',
       reviewer: 'Reviewer',
       message: '',
+      stayedOpen: [],
       decision: null,
     },
     jobNumber: '1',

@@ -34,8 +34,11 @@ export function openPayload(row: RevisionEntity, previousHash: string | null): R
 function completedPayload(json: unknown): unknown {
   if (typeof json !== 'object' || json === null) return json;
   const { document, reading } = json as Record<string, unknown>;
-  return { ...json, document: upgradeDocument(document), reading: completeReading(reading) };
+  return { ...ADDED, ...json, document: upgradeDocument(document), reading: completeReading(reading) };
 }
+
+/** What payloads of earlier versions do not hold: it was not asked for then. */
+const ADDED = { stayedOpen: null } satisfies Partial<RevisionPayload>;
 
 function faultOfRow(
   row: RevisionEntity,

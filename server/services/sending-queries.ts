@@ -1,13 +1,16 @@
-import { type EntityManager, IsNull } from 'typeorm';
+import { type EntityManager, Not } from 'typeorm';
 import { DecisionEntity, RevisionEntity } from '#server/entities/ledger-entity.ts';
 import { NoteEntity } from '#server/entities/note-entity.ts';
 import { type AppError, conflict, unprocessable } from '#server/errors/app-error.ts';
+import { beforeSending } from '#shared/compute/before-sending.ts';
+import type { OpenItem } from '#shared/contract/before-sending.ts';
 import type { PersonRef } from '#shared/contract/common.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { SendingDto } from '#shared/contract/revisions.ts';
+import { readDocument } from './net-document.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { type NetPlace, placeOfNet, putAwayRefusal } from './net-place.ts';
-import { openPoints } from './open-points.ts';
 import { revisionLabel } from './revision-label.ts';
 import { readingOf } from './schedule-queries.ts';
 
@@ -65,6 +68,26 @@ function unfinished({ findings }: NetReading): AppError {
   );
 }
 
+/** What is still open on the net; nothing is said of an unfinished one, which is refused as a whole. */
+export async function openItemsOf(
+  manager: EntityManager,
+  netId: string,
+  document: FlowNetDocument,
+  reading: NetReading,
+): Promise<OpenItem[]> {
+  if (reading.state !== 'read') return [];
+  const notes = await manager.find(NoteEntity, {
+    select: { id: true, number: true },
+    where: { netId, state: Not('closed') },
+    order: { number: 'ASC' },
+  });
+  return beforeSending(
+    document,
+    reading,
+    notes.map(({ number }) => number),
+  );
+}
+
 /** What to know before sending for checking. @throws AppError not-found */
 export async function sendingOf(manager: EntityManager, netId: string, actorId: string): Promise<SendingDto> {
   const place = await placeOfNet(manager, netId);
@@ -79,8 +102,8 @@ export async function sendingOf(manager: EntityManager, netId: string, actorId: 
       email,
       drew: drew.has(id),
     })),
-    findings: [...reading.findings, ...(reading.state === 'read' ? openPoints(reading) : [])],
-    openNotes: await manager.countBy(NoteEntity, { netId, closedAt: IsNull() }),
+    findings: reading.state === 'read' ? [] : reading.findings,
+    open: await openItemsOf(manager, netId, await readDocument(manager, place), reading),
     refusal: refusal?.detail ?? null,
     nextLabel: revisionLabel((newest?.number ?? 0) + 1),
   };

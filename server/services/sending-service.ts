@@ -4,6 +4,7 @@ import { AppError, conflict, invalidInput } from '#server/errors/app-error.ts';
 import type { Actor } from '#server/http/route-record.ts';
 import { sentForCheckingMail } from '#server/mail/templates/checking-mails.ts';
 import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
+import type { OpenItem, StayedOpen } from '#shared/contract/before-sending.ts';
 import type { PersonRef } from '#shared/contract/common.ts';
 import type { RevisionPayload, RevisionSummary, sendInput } from '#shared/contract/revisions.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
@@ -19,7 +20,13 @@ import { readInThread } from './reading-threads.ts';
 import { revisionLabel } from './revision-label.ts';
 import { freezePayload } from './revision-payload.ts';
 import { revisionSummaryOf } from './revision-queries.ts';
-import { newestRevision, type Reviewer, reviewersOfDam, sendingRefusal } from './sending-queries.ts';
+import {
+  newestRevision,
+  openItemsOf,
+  type Reviewer,
+  reviewersOfDam,
+  sendingRefusal,
+} from './sending-queries.ts';
 import type { ServiceDeps } from './service-deps.ts';
 
 type SendInput = z.output<typeof sendInput>;
@@ -68,6 +75,7 @@ export function createSendingService(deps: SendingDeps) {
       reviewer: { id: reviewer.id, name: reviewer.name },
       sentAt: clock.now().toISOString(),
       message: wellFormed(input.message),
+      stayedOpen: withReasons(await openItemsOf(manager, place.net.id, document, reading), input.reasons),
       previousHash: previous?.payloadHash ?? null,
     };
     return { payload, reviewer };
@@ -159,6 +167,20 @@ function chooseReviewer(
     'Another person has to check it',
     `${reviewer.name} drew or sends this net. Choose a reviewer who did not.`,
   );
+}
+
+/** Each open item with its reason. @throws AppError invalid-input naming those without one */
+function withReasons(items: readonly OpenItem[], reasons: SendInput['reasons']): StayedOpen[] {
+  const given = new Map(reasons.map(({ key, reason }) => [key, reason]));
+  const missing = items.filter(({ key }) => !given.has(key));
+  if (missing.length > 0)
+    throw invalidInput(
+      missing.map(({ key, text }) => ({
+        path: `reasons.${key}`,
+        message: `Settle this, or give a reason why it stays: ${text}`,
+      })),
+    );
+  return items.map((each) => ({ ...each, reason: wellFormed(given.get(each.key) ?? '') }));
 }
 
 const changedMeanwhile = (changeNumber: number) =>

@@ -14,6 +14,14 @@ export const MAX_NET_FILE_BYTES = 6 * 1024 * 1024;
 export const MAX_OPS_PER_BATCH = 500;
 /** Characters of one note or answer. */
 export const MAX_NOTE_LENGTH = 4000;
+/** Files of one note or answer; a walk along a dam gives some ten photographs. */
+export const MAX_NOTE_FILES = 12;
+/** Bytes of one file of a note: several photographs of a large sensor, or a report of some hundred pages. */
+export const MAX_NOTE_FILE_BYTES = 50 * 1024 * 1024;
+/** Minutes in which an author may change what a note or an answer says; later, an answer says it better. */
+export const NOTE_EDIT_MINUTES = 15;
+/** Reasons given with one sending: a schedule of a thousand points with a question at each stays below it. */
+export const MAX_OPEN_REASONS = 5000;
 /** Characters a password needs at least (NIST SP 800-63B asks for 8; an office tool can ask for more). */
 export const MIN_PASSWORD_LENGTH = 10;
 /** Characters a password may have, so that hashing stays bounded. */

@@ -1,17 +1,20 @@
 import * as z from 'zod/mini';
 import { damAction } from './actions.ts';
+import { openItem, openReason, stayedOpen } from './before-sending.ts';
 import { id, personRef, timestamp } from './common.ts';
 import { flowNetDocument } from './document.ts';
 import { sheetDto } from './drawings.ts';
-import { MAX_NOTE_LENGTH } from './limits.ts';
+import { MAX_NOTE_LENGTH, MAX_OPEN_REASONS } from './limits.ts';
 import { noteDto } from './notes.ts';
 import { finding, netReading } from './reading.ts';
 
 /** `GET /nets/:netId/sending`: what to know before sending for checking. */
 export const sendingDto = z.object({
   reviewers: z.array(z.object({ person: personRef, email: z.string(), drew: z.boolean() })),
+  /** What withholds the figures of an unfinished net; empty for one that can be sent. */
   findings: z.array(finding),
-  openNotes: z.number(),
+  /** What is still open on a finished net: each needs a reason if it stays. */
+  open: z.array(openItem),
   /** Null when it may be sent; otherwise the sentence that says what stands in the way. */
   refusal: z.nullable(z.string()),
   nextLabel: z.string(),
@@ -22,6 +25,8 @@ export const sendInput = z.object({
   id,
   reviewerId: id,
   message: z.string().check(z.trim(), z.maxLength(MAX_NOTE_LENGTH)),
+  /** A reason for each item that is still open; one that is open without a reason is asked for. */
+  reasons: z._default(z.array(openReason).check(z.maxLength(MAX_OPEN_REASONS)), []),
   /** Newest change the sender saw; a later one by someone else is a conflict and nothing is sent. */
   changeNumber: z.number(),
 });
@@ -46,6 +51,8 @@ export const revisionPayload = z.object({
   reviewer: personRef,
   sentAt: timestamp,
   message: z.string(),
+  /** What was open when it was sent, with the engineer's reasons; null where nobody was asked, before that was kept. */
+  stayedOpen: z.nullable(z.array(stayedOpen)),
   /** Hash of the revision before it in the same net; null for the first. */
   previousHash: z.nullable(z.string()),
 });

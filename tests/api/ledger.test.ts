@@ -4,6 +4,7 @@ import { pino } from 'pino';
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { addFinishedNet, batchesOf, lineOf, openNet, put, putSingle } from '#tests/support/net-fixture.ts';
+import { reasonsFor } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { withDataSource } from '#tests/support/test-database.ts';
 import { addMember } from '#tests/support/test-people.ts';
@@ -29,7 +30,13 @@ async function twoRevisions() {
   const send = async () => {
     const id = uuidv7();
     const { changeNumber } = await openNet(place.caller, place.netId);
-    const input = { id, reviewerId: reviewer.id, message: '', changeNumber };
+    const input = {
+      id,
+      reviewerId: reviewer.id,
+      message: '',
+      changeNumber,
+      reasons: await reasonsFor(place.caller, place.netId),
+    };
     await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
     return id;
   };

@@ -11,7 +11,9 @@ import { originalKey, thumbnailKey, tileKey, tilePrefix } from '#server/storage/
 import type { DamAction, GlobalAction } from '#shared/contract/actions.ts';
 import { damAction } from '#shared/contract/actions.ts';
 import type { Caller } from '#tests/support/caller.ts';
+import { pngDrawing } from '#tests/support/drawing-files.ts';
 import { addFinishedNet, openNet } from '#tests/support/net-fixture.ts';
+import { reasonsFor } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
@@ -113,10 +115,23 @@ afterAll(() => app.close());
 async function furnish(netId: string, sheetId: string): Promise<Record<string, string>> {
   const noteId = uuidv7();
   const note = { id: noteId, anchor: { on: 'place', at: [1, 1] }, text: 'Why?' };
-  await callers.colleague.post(`/nets/${netId}/notes`, note).expect(201);
+  const { body: written } = await callers.colleague.post(`/nets/${netId}/notes`, note).expect(201);
+  const fileId = uuidv7();
+  await callers.colleague
+    .post(`/nets/${netId}/note-files?id=${fileId}`)
+    .attach('file', await pngDrawing(), 'photo.png')
+    .expect(201);
+  const answer = { id: uuidv7(), text: 'See the photograph.', fileIds: [fileId] };
+  await callers.colleague.post(`/notes/${noteId}/answers`, answer).expect(201);
   const revisionId = uuidv7();
   const { changeNumber } = await openNet(callers.engineer, netId);
-  const sending = { id: revisionId, reviewerId: ids.reviewerPerson, message: '', changeNumber };
+  const sending = {
+    id: revisionId,
+    reviewerId: ids.reviewerPerson,
+    message: '',
+    changeNumber,
+    reasons: await reasonsFor(callers.engineer, netId),
+  };
   await callers.engineer.post(`/nets/${netId}/revisions`, sending).expect(201);
   const letter = { subject: 'Letter', text: 'text', html: '<p>text</p>' };
   const mailId = await inTransaction(app.deps, (tx) =>
@@ -133,7 +148,16 @@ async function furnish(netId: string, sheetId: string): Promise<Record<string, s
   const calculationSheetId = uuidv7();
   const asked = { id: calculationSheetId, revisionId, paper: 'A4', jobNumber: '' };
   await callers.colleague.post(`/nets/${netId}/calculation-sheets`, asked).expect(202);
-  return { noteId, revisionId, mailId, calculationSheetId, drawingId: drawing.id, clientId: uuidv7() };
+  return {
+    noteId,
+    entryId: written.entries[0].id,
+    fileId,
+    revisionId,
+    mailId,
+    calculationSheetId,
+    drawingId: drawing.id,
+    clientId: uuidv7(),
+  };
 }
 
 interface Answer {

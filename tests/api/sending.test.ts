@@ -40,7 +40,8 @@ describe('before sending for checking', () => {
     const note = { id: uuidv7(), anchor: { on: 'place', at: [1, 1] }, text: 'Why?' };
     await reviewer.caller.post(`/nets/${netId}/notes`, note).expect(201);
     const { body } = await caller.get(`/nets/${netId}/sending`).expect(200);
-    expect(body).toMatchObject({ openNotes: 1, nextLabel: 'A' });
+    expect(body).toMatchObject({ findings: [], nextLabel: 'A' });
+    expect(body.open).toContainEqual({ key: 'openNotes 1', about: 'notes', text: 'Note 1 is not closed.' });
     expect(
       body.reviewers.map((each: { person: { name: string }; drew: boolean }) => [
         each.person.name,
@@ -107,6 +108,35 @@ describe('sending for checking', () => {
     expect(app.jobs.queued).toContainEqual({ name: 'send-mail', rowId: mail?.id, afterSeconds: 0 });
     const summary = (await openNet(caller, netId)).net;
     expect(summary).toMatchObject({ state: 'sent', revisionLabel: 'A', changedSinceRevision: false });
+  });
+
+  it('asks for a reason for each thing that stays open, and freezes the reasons with the net', async () => {
+    const place = await readyToSend(app);
+    const note = { id: uuidv7(), anchor: { on: 'place', at: [1, 1] }, text: 'Why?' };
+    await place.caller.post(`/nets/${place.netId}/notes`, note).expect(201);
+    const url = `/nets/${place.netId}/revisions`;
+    const input = await sendInputFor(place, place.reviewer.person.id);
+    const without = input.reasons.filter(({ key }) => key !== 'openNotes 1');
+    expect(without).toHaveLength(input.reasons.length - 1);
+    const { body } = await place.caller.post(url, { ...input, reasons: without }).expect(400);
+    expect(body.errors).toEqual([
+      {
+        path: 'reasons.openNotes 1',
+        message: 'Settle this, or give a reason why it stays: Note 1 is not closed.',
+      },
+    ]);
+    const blank = input.reasons.map((each) => ({ ...each, reason: ' ' }));
+    await place.caller.post(url, { ...input, reasons: blank }).expect(400);
+    const gone = { key: 'no longer open', reason: 'Settled since.' };
+    await place.caller.post(url, { ...input, reasons: [...input.reasons, gone] }).expect(201);
+    const opened = (await place.reviewer.caller.get(`/revisions/${input.id}`).expect(200)).body;
+    expect(opened.payload.stayedOpen).toHaveLength(input.reasons.length);
+    expect(opened.payload.stayedOpen).toContainEqual({
+      key: 'openNotes 1',
+      about: 'notes',
+      text: 'Note 1 is not closed.',
+      reason: 'Known to the office.',
+    });
   });
 
   it('does it once when the same sending is repeated', async () => {

@@ -4,6 +4,7 @@ import { RenderJobEntity, SheetEntity } from '#server/entities/drawing-entity.ts
 import type { DamRole } from '#shared/contract/actions.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { addFinishedNet, addNet, addSheet, openNet } from '#tests/support/net-fixture.ts';
+import { reasonsFor } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
@@ -36,7 +37,13 @@ async function sent() {
   const reviewer = await addPerson(place.damId, 'Remi Okafor', 'reviewer');
   const revisionId = uuidv7();
   const { changeNumber } = await openNet(place.caller, place.netId);
-  const input = { id: revisionId, reviewerId: reviewer.person.id, message: '', changeNumber };
+  const input = {
+    id: revisionId,
+    reviewerId: reviewer.person.id,
+    message: '',
+    changeNumber,
+    reasons: await reasonsFor(place.caller, place.netId),
+  };
   await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
   return { ...place, reviewer, revisionId };
 }

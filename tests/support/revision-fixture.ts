@@ -1,5 +1,6 @@
 import { v7 as uuidv7 } from 'uuid';
 import type { DamRole } from '#shared/contract/actions.ts';
+import type { SendingDto } from '#shared/contract/revisions.ts';
 import type { Caller } from './caller.ts';
 import { addFinishedNet, batchesOf, lineOf, type NetPlaceFixture, openNet, put } from './net-fixture.ts';
 import type { TestApp } from './test-app.ts';
@@ -34,7 +35,14 @@ export async function readyToSend(app: TestApp): Promise<ReadyNet> {
 /** What sends the net as it stands to the reviewer. */
 export async function sendInputFor({ caller, netId }: NetPlaceFixture, reviewerId: string) {
   const { changeNumber } = await openNet(caller, netId);
-  return { id: uuidv7(), reviewerId, message: 'Please look at line 3.', changeNumber };
+  const reasons = await reasonsFor(caller, netId);
+  return { id: uuidv7(), reviewerId, message: 'Please look at line 3.', changeNumber, reasons };
+}
+
+/** A reason for all that is still open on the net, as the send dialog gives it. */
+export async function reasonsFor(caller: Caller, netId: string) {
+  const { body } = await caller.get(`/nets/${netId}/sending`).expect(200);
+  return (body as SendingDto).open.map(({ key }) => ({ key, reason: 'Known to the office.' }));
 }
 
 /** A finished net that was sent to its reviewer. */

@@ -1,3 +1,4 @@
+import type { StayedOpen } from '#shared/contract/before-sending.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NoteDto } from '#shared/contract/notes.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
@@ -11,6 +12,7 @@ import { exitsChapter, profilesChapter } from './profiles.ts';
 import { notesChapter, recordChapter } from './record.ts';
 import { resultsChapter } from './results.ts';
 import { type SectionFigure, sectionFigure } from './section-figure.ts';
+import { stayedOpenChapter } from './stayed-open.ts';
 import { titleBlock } from './title-block.ts';
 import { validityChapter } from './validity.ts';
 
@@ -34,6 +36,8 @@ export type SheetStatus =
       sentBy: string;
       reviewer: string;
       message: string;
+      /** Null for a revision that was sent before it was asked for. */
+      stayedOpen: readonly StayedOpen[] | null;
       decision: SheetDecision | null;
     };
 
@@ -117,6 +121,7 @@ export function sheetContent(source: SheetSource): SheetContent {
     netCheckChapter,
     profilesChapter,
     exitsChapter,
+    stayedOpenChapter,
     notesChapter,
     recordChapter,
     cautionsChapter,

@@ -28,6 +28,7 @@ export function revisionSource({
       sentBy: payload.sentBy.name,
       reviewer: payload.reviewer.name,
       message: payload.message,
+      stayedOpen: payload.stayedOpen,
       decision: decision && {
         decision: decision.decision,
         by: decision.decidedBy.name,

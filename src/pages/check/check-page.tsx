@@ -8,6 +8,7 @@ import { revisionListQuery, revisionQuery } from '#client/features/revisions/api
 import { DecisionPanel } from '#client/features/revisions/components/decision-panel.tsx';
 import { RecordFacts } from '#client/features/revisions/components/record-facts.tsx';
 import { RevisionHistory } from '#client/features/revisions/components/revision-history.tsx';
+import { StayedOpenList } from '#client/features/revisions/components/stayed-open.tsx';
 import { CalculationSheetPanel } from '#client/features/sheets/components/calculation-sheet-panel.tsx';
 import { paths } from '#client/lib/paths.ts';
 import { useMedia } from '#client/lib/use-media.ts';
@@ -92,6 +93,7 @@ function Check({ revision }: { revision: RevisionDto }) {
           check={
             <>
               <DecisionPanel revision={revision} />
+              <StayedOpenList stayedOpen={payload.stayedOpen} />
               <RecordFacts revision={revision} />
               <CalculationSheetPanel netId={payload.netId} revisionId={summary.id} />
               <section aria-labelledby="history" className="border-t border-rule px-3 py-2">

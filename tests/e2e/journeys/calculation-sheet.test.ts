@@ -6,6 +6,7 @@ import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 import { randomReadings } from '#tests/support/exact-nets/random-readings.ts';
 import { type JourneyWorld, openWorld } from '#tests/support/journey/journey-world.ts';
 import { openNetFromFile } from '#tests/support/journey/net-from-file.ts';
+import { sendForChecking } from '#tests/support/journey/send-steps.ts';
 
 const { net, pxPerUnit } = EXACT_NETS[0]!;
 
@@ -43,10 +44,7 @@ describe('the calculation sheet', () => {
   });
 
   it('of a revision is asked for on the check page, and is read on the screen', async () => {
-    await page.getByRole('button', { name: 'Send for checking' }).click();
-    const dialog = page.getByRole('dialog');
-    await dialog.getByRole('button', { name: 'Send', exact: true }).click();
-    await dialog.waitFor({ state: 'detached' });
+    await sendForChecking(page);
     await page.getByRole('link', { name: 'Revision A' }).click();
     // The desk, which has a panel of the same name, stays until the check page is there.
     await page.getByText('Revision A, shown here').waitFor();

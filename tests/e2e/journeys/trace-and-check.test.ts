@@ -26,6 +26,7 @@ import {
 } from '#tests/support/journey/desk-steps.ts';
 import { addDrawings, openNewNet } from '#tests/support/journey/drawing-steps.ts';
 import { type JourneyWorld, openWorld } from '#tests/support/journey/journey-world.ts';
+import { sendForChecking } from '#tests/support/journey/send-steps.ts';
 import { type SmtpStandIn, startSmtpStandIn } from '#tests/support/smtp-stand-in.ts';
 
 let smtp: SmtpStandIn;
@@ -112,8 +113,7 @@ describe('from a scan to a decision', () => {
   });
 
   it('the reviewer gets a mail whose link leads to the frozen net, and returns it with a note', async () => {
-    await engineer.getByRole('button', { name: 'Send for checking' }).click();
-    await engineer.getByRole('button', { name: 'Send', exact: true }).click();
+    await sendForChecking(engineer);
     await engineer.getByText(/^Revision A has been sent/).waitFor();
     const mail = await mailTo(world.reviewer.email);
     expect(mail.subject).toContain('Harrow Fen Dam');
@@ -136,8 +136,7 @@ describe('from a scan to a decision', () => {
   });
 
   it('the next revision is accepted; the one before it stays as it was', async () => {
-    await engineer.getByRole('button', { name: 'Send for checking' }).click();
-    await engineer.getByRole('button', { name: 'Send', exact: true }).click();
+    await sendForChecking(engineer);
     await engineer.getByText(/^Revision B has been sent/).waitFor();
     const [revisionB] = await world.server.db.query("SELECT id FROM revision WHERE label = 'B'");
     await reviewer.goto(`/revisions/${revisionB.id}`);

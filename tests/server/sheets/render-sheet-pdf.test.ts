@@ -26,6 +26,9 @@ const source = (more: Partial<SheetSource> = {}): SheetSource => ({
     sentBy: 'Ines Żółkoś',
     reviewer: 'Remi Okafor',
     message: 'Please look at line 3.',
+    stayedOpen: [
+      { key: 'noDatum', about: 'datum', text: 'The vertical datum has no name.', reason: 'Local gauge.' },
+    ],
     decision: { decision: 'accepted', by: 'Remi Okafor', note: '', at: '2026-11-05T14:00:00.000Z' },
   },
   jobNumber: 'J-2207',

@@ -12,7 +12,7 @@ import type { RevisionSummary, SendingDto } from '#shared/contract/revisions.ts'
 import { useSendForChecking } from '../api/revision-mutations.ts';
 import { sendingQuery } from '../api/revision-queries.ts';
 import { ReviewerChoice } from './reviewer-choice.tsx';
-import { StillOpen } from './still-open.tsx';
+import { type Reasons, StillOpen, withoutReason } from './still-open.tsx';
 
 interface SendDialogProps {
   netId: string;
@@ -27,7 +27,7 @@ export function SendDialog(props: SendDialogProps) {
   const sending = useQuery(sendingQuery(props.netId));
   const title = sending.data ? text.title(sending.data.nextLabel) : text.button;
   return (
-    <Dialog title={title} onClose={props.onClose}>
+    <Dialog title={title} onClose={props.onClose} wide>
       {sending.data ? <SendForm {...props} sending={sending.data} /> : null}
       {sending.isPending ? <p className="shown-late m-0 text-ink-2">{text.loading}</p> : null}
       <ProblemNote error={sending.error} />
@@ -51,13 +51,24 @@ function SendForm({
   const [reviewerId, setReviewerId] = useState(free.length === 1 ? (free[0]?.person.id ?? '') : '');
   const [message, setMessage] = useState('');
   const [fault, setFault] = useState<string | null>(null);
+  const [reasons, setReasons] = useState<Reasons>({});
+  const [asked, setAsked] = useState(false);
+  const missing = withoutReason(sending.open, reasons).length;
   const [id] = useState(() => uuidv7());
   const send = useSendForChecking(netId);
+  const input = () => ({
+    id,
+    reviewerId,
+    message,
+    changeNumber,
+    reasons: sending.open.map(({ key }) => ({ key, reason: reasons[key] ?? '' })),
+  });
   const submit = (event: FormEvent) => {
     event.preventDefault();
     if (send.isPending) return;
+    setAsked(true);
     if (reviewerId === '') setFault(text.chooseReviewer);
-    else send.mutate({ id, reviewerId, message, changeNumber }, { onSuccess: onSent });
+    else if (missing === 0) send.mutate(input(), { onSuccess: onSent });
   };
   const refused = sending.refusal !== null || free.length === 0;
   return (
@@ -66,7 +77,7 @@ function SendForm({
       {sending.refusal ? (
         <p className="m-0 border-l-[3px] border-wrong pl-3 text-wrong">{sending.refusal}</p>
       ) : null}
-      <StillOpen sending={sending} />
+      <StillOpen sending={sending} reasons={reasons} asked={asked} onReasons={setReasons} />
       <ReviewerChoice
         reviewers={sending.reviewers}
         chosen={reviewerId}
@@ -84,6 +95,11 @@ function SendForm({
         onChange={(event) => setMessage(event.target.value)}
       />
       <ProblemNote error={send.error} />
+      {asked && missing > 0 ? (
+        <p role="alert" className="m-0 text-sm text-wrong">
+          {text.reasonsNeeded(missing)}
+        </p>
+      ) : null}
       <Actions>
         <Button
           type="submit"
