@@ -3,6 +3,7 @@ import { calculationSheetRoutes } from './calculation-sheet-routes.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
 import { damSeepageRoutes } from './dam-seepage-routes.ts';
+import { downloadRoutes } from './download-routes.ts';
 import { drawingRoutes } from './drawing-routes.ts';
 import { liveRoutes } from './live-routes.ts';
 import { mailRoutes } from './mail-routes.ts';
@@ -35,6 +36,7 @@ export const routes: readonly RouteRecord[] = [
   ...commandRoutes,
   ...presenceRoutes,
   ...scheduleRoutes,
+  ...downloadRoutes,
   ...noteRoutes,
   ...revisionRoutes,
   ...calculationSheetRoutes,

@@ -3,6 +3,7 @@ import * as z from 'zod/mini';
 import { defineRoute, type RouteRecord } from '#server/http/route-record.ts';
 import { type Download, documentFile, scheduleFile, scheduleOf } from '#server/services/schedule-queries.ts';
 import { id } from '#shared/contract/common.ts';
+import { csvQuery, markOf } from '#shared/contract/downloads.ts';
 import { netReading } from '#shared/contract/reading.ts';
 
 const netParams = z.object({ netId: id });
@@ -27,7 +28,9 @@ export const scheduleRoutes: RouteRecord[] = [
     path: '/nets/:netId/schedule.csv',
     access: onNet,
     params: netParams,
-    handle: async ({ deps, params, res }) => sendFile(res, await scheduleFile(deps.db.manager, params.netId)),
+    query: csvQuery,
+    handle: async ({ deps, params, query, res }) =>
+      sendFile(res, await scheduleFile(deps.db.manager, params.netId, markOf(query))),
   }),
   defineRoute({
     method: 'get',

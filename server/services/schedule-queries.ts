@@ -2,6 +2,8 @@ import type { EntityManager } from 'typeorm';
 import { AppError } from '#server/errors/app-error.ts';
 import type { FlowNetDocument, UnitSystem } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
+import { BYTE_ORDER_MARK } from '#shared/text/csv.ts';
+import type { DecimalMark } from '#shared/text/number-text.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
 import { readDocument } from './net-document.ts';
@@ -62,9 +64,6 @@ export async function canBeRead(manager: EntityManager, net: ReadState): Promise
   return state === 'read';
 }
 
-/** Without it some spreadsheets read UTF-8 as Latin letters, and "±" comes out as two signs. */
-const BYTE_ORDER_MARK = '\ufeff';
-
 /** As `readingOf`, with null for a net that cannot be read: for lists, which one tangle must not spoil. */
 export async function readingIfAny(manager: EntityManager, place: NetPlace): Promise<NetReading | null> {
   try {
@@ -76,13 +75,17 @@ export async function readingIfAny(manager: EntityManager, place: NetPlace): Pro
 }
 
 /** The schedule as CSV. */
-export async function scheduleFile(manager: EntityManager, netId: string): Promise<Download> {
+export async function scheduleFile(
+  manager: EntityManager,
+  netId: string,
+  mark: DecimalMark = '.',
+): Promise<Download> {
   const place = await placeOfNet(manager, netId);
   const reading = await readingOf(manager, place);
   const { unitSystem } = place.net;
   return {
     fileName: fileNameOf(place, 'csv'),
-    text: BYTE_ORDER_MARK + scheduleCsv({ unitSystem, datum: place.dam.datum }, reading),
+    text: BYTE_ORDER_MARK + scheduleCsv({ unitSystem, datum: place.dam.datum }, reading, mark),
   };
 }
 
@@ -94,7 +97,7 @@ export async function documentFile(manager: EntityManager, netId: string): Promi
 }
 
 /** Drawing, section and net, without the characters that file systems keep for themselves. */
-function fileNameOf({ drawing, section, net }: NetPlace, extension: string): string {
+export function fileNameOf({ drawing, section, net }: NetPlace, extension: string): string {
   const words = [drawing.number, sectionTitle(section.name), net.name].filter(Boolean).join(' ');
   const safe = words
     .replaceAll(/[\\/:*?"<>|\p{Cc}]/gu, '-')

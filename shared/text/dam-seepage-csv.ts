@@ -2,6 +2,7 @@ import { FLOW_UNITS, flowIn } from '#shared/compute/quantities/seepage-volume.ts
 import { metresPerLengthUnit } from '#shared/compute/units.ts';
 import type { DamSeepageDto } from '#shared/contract/dam-seepage.ts';
 import { type CsvCell, csvText } from '#shared/text/csv.ts';
+import type { DecimalMark } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
 type Table = ReadonlyArray<readonly CsvCell[]>;
@@ -14,9 +15,9 @@ const FIGURES = 12;
  * the cautions, each a table after an empty line. Chainages, lengths and levels in the dam's length unit, the
  * seepage of a net in its unit system's. Where there is no figure the cell is empty and the remark says why.
  */
-export function damSeepageCsv(found: DamSeepageDto): string {
+export function damSeepageCsv(found: DamSeepageDto, mark: DecimalMark = '.'): string {
   const tables = [netTable(found), reachTable(found), cautionTable(found)].filter(({ length }) => length > 1);
-  return tables.map(csvText).join('\r\n');
+  return tables.map((table) => csvText(table, mark)).join('\r\n');
 }
 
 function netTable({ unitSystem, datum, chosen }: DamSeepageDto): Table {

@@ -22,7 +22,7 @@ export function netCsv(document: Frame, reading: NetReading): string {
     checkTable(document, reading),
     findingTable(reading),
   ].filter((table) => table.length > 1);
-  return [scheduleCsv(document, reading), ...tables.map(csvText)].join('\r\n');
+  return [scheduleCsv(document, reading), ...tables.map((table) => csvText(table))].join('\r\n');
 }
 
 function quantityTable({ unitSystem }: Frame, { quantities, doubt, state }: NetReading): Table {

@@ -1,14 +1,16 @@
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { ProfileReading, ProfileSample } from '#shared/contract/reading-quantities.ts';
 import { type CsvCell, csvText } from '#shared/text/csv.ts';
+import type { DecimalMark } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
-/** A profile as CSV for a stability program: its rows as `profileRows` gives them, with decimal points. */
+/** A profile as CSV for a stability program: its rows as `profileRows` gives them, with the decimal mark asked for. */
 export function profileCsv(
   document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
   profile: Pick<ProfileReading, 'name' | 'samples'>,
+  mark: DecimalMark = '.',
 ): string {
-  return csvText(profileRows(document, profile));
+  return csvText(profileRows(document, profile), mark);
 }
 
 /**

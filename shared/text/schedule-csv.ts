@@ -1,6 +1,7 @@
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading, PointReading } from '#shared/contract/reading.ts';
 import { type CsvCell, csvText } from '#shared/text/csv.ts';
+import type { DecimalMark } from '#shared/text/number-text.ts';
 import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 
 /**
@@ -12,6 +13,7 @@ import { elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 export function scheduleCsv(
   document: Pick<FlowNetDocument, 'unitSystem' | 'datum'>,
   reading: NetReading,
+  mark: DecimalMark = '.',
 ): string {
   const units = unitNames(document.unitSystem);
   const elevation = elevationUnit(document.unitSystem, document.datum);
@@ -42,7 +44,8 @@ export function scheduleCsv(
     const { head = null, headPlusMinus = null, difference = null, differencePlusMinus = null } = found ?? {};
     return [head, headPlusMinus, difference, differencePlusMinus].map((value) => rounded(value, 3));
   };
-  return csvText([head, ...reading.points.map((point) => [...rowOf(point), ...measuredCells(point.id)])]);
+  const rows = reading.points.map((point) => [...rowOf(point), ...measuredCells(point.id)]);
+  return csvText([head, ...rows], mark);
 }
 
 function rowOf(point: PointReading): CsvCell[] {

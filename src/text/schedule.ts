@@ -26,7 +26,6 @@ const enScheduleText = {
   copy: 'Copy table',
   copied: 'The table is on the clipboard.',
   notCopied: 'The browser did not let the table be copied. Download it as CSV instead.',
-  download: 'Download CSV',
   add: 'Type a point',
   empty: 'No reading points yet. Press R and click on the drawing, or type the coordinates of one.',
   emptyReadOnly: 'No reading points on this net.',

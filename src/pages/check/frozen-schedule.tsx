@@ -5,10 +5,14 @@ import { Schedule } from '#client/features/desk/components/schedule.tsx';
 import { ScheduleState } from '#client/features/desk/components/schedule-pane.tsx';
 import { ENTERED_ORDER, type Sort, scheduleLead } from '#client/features/desk/components/schedule-rows.ts';
 import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
-import { downloadText } from '#client/lib/download.ts';
+import { downloadFrom, downloadText } from '#client/lib/download.ts';
+import { apiUrl } from '#client/lib/http.ts';
+import { localeStore } from '#client/lib/locale.ts';
+import { downloadsText } from '#client/text/downloads.ts';
 import { checkText } from '#client/text/revisions.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { RevisionPayload } from '#shared/contract/revisions.ts';
+import { BYTE_ORDER_MARK } from '#shared/text/csv.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 
 /** The schedule as it was frozen: shown, sorted and kept as CSV, never worked out again. */
@@ -18,7 +22,8 @@ export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; s
   const selection = useStore(store, (state) => state.selection);
   const download = () => {
     const name = `${payload.drawing.number || 'net'}-${payload.label}-schedule.csv`;
-    downloadText(scheduleCsv(document, reading), name, 'text/csv;charset=utf-8');
+    const csv = scheduleCsv(document, reading, localeStore.getState().mark);
+    downloadText(BYTE_ORDER_MARK + csv, name, 'text/csv;charset=utf-8');
   };
   return (
     <section aria-label={text.title} className="h-full overflow-auto bg-film">
@@ -34,6 +39,13 @@ export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; s
           onClick={download}
         >
           {checkText.downloadCsv}
+        </button>
+        <button
+          type="button"
+          className={buttonClass('quiet', 'px-2 py-[2px] text-sm')}
+          onClick={() => downloadFrom(apiUrl(`/revisions/${payload.revisionId}/traces.dxf`))}
+        >
+          {downloadsText.tracesOf}
         </button>
       </div>
       <ScheduleState reading={reading} failed={false} />

@@ -11,12 +11,14 @@ import { damSeepageKey, damSeepageQuery } from '#client/features/dams/api/dam-se
 import { FlowUnitField } from '#client/features/desk/components/flow-unit-field.tsx';
 import { flowUnitChoice, ownFlowUnit } from '#client/features/desk/model/flow-unit.ts';
 import { downloadText } from '#client/lib/download.ts';
+import { localeStore } from '#client/lib/locale.ts';
 import { paths } from '#client/lib/paths.ts';
 import { useLive } from '#client/lib/use-live.ts';
 import { damSeepageText as text } from '#client/text/dam-seepage.ts';
 import { damsText } from '#client/text/dams.ts';
 import type { DamSeepageDto } from '#shared/contract/dam-seepage.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
+import { BYTE_ORDER_MARK } from '#shared/text/csv.ts';
 import { damSeepageCsv } from '#shared/text/dam-seepage-csv.ts';
 import { cleanFileName } from '#shared/text/file-name.ts';
 import { AppFrame } from '../app-frame.tsx';
@@ -75,12 +77,13 @@ function useSeepageLive(damId: string, netIds: readonly string[]): void {
   });
 }
 
-/** Without it some spreadsheets read UTF-8 as Latin letters. */
-const BYTE_ORDER_MARK = '\ufeff';
-
 function download(dam: DamDto, found: DamSeepageDto): void {
   const name = cleanFileName(text.fileName(dam.name));
-  downloadText(BYTE_ORDER_MARK + damSeepageCsv(found), name, 'text/csv;charset=utf-8');
+  downloadText(
+    BYTE_ORDER_MARK + damSeepageCsv(found, localeStore.getState().mark),
+    name,
+    'text/csv;charset=utf-8',
+  );
 }
 
 function NothingFound({ error }: { error: unknown }) {

@@ -1,13 +1,17 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
+import { Button } from '#client/components/button.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { Part } from '#client/components/part.tsx';
 import { damActivityQuery } from '#client/features/activity/api/activity-queries.ts';
 import { ActivityTable } from '#client/features/activity/components/activity-list.tsx';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
+import { csvUrl } from '#client/lib/csv-url.ts';
+import { downloadFrom } from '#client/lib/download.ts';
 import { paths } from '#client/lib/paths.ts';
 import { damsText as text } from '#client/text/dams.ts';
+import { downloadsText } from '#client/text/downloads.ts';
 import { AppFrame } from '../app-frame.tsx';
 
 export function DamActivityPage() {
@@ -20,7 +24,12 @@ export function DamActivityPage() {
   ];
   return (
     <AppFrame trail={trail}>
-      <Page title={text.activityOf(dam.name)} heading={text.activity} lead={dam.name}>
+      <Page
+        title={text.activityOf(dam.name)}
+        heading={text.activity}
+        lead={dam.name}
+        action={<DownloadActivity damId={dam.id} />}
+      >
         <Panel title={text.activity} look="register">
           <Part>
             <ActivityTable of={damActivityQuery(dam.id)} />
@@ -28,5 +37,13 @@ export function DamActivityPage() {
         </Panel>
       </Page>
     </AppFrame>
+  );
+}
+
+function DownloadActivity({ damId }: { damId: string }) {
+  return (
+    <Button look="quiet" onClick={() => downloadFrom(csvUrl(`/dams/${damId}/events.csv`))}>
+      {downloadsText.activity}
+    </Button>
   );
 }

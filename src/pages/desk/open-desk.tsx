@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Button } from '#client/components/button.tsx';
 import { useNotice } from '#client/components/notice.tsx';
+import { netDownloadUrl } from '#client/features/desk/api/net-downloads.ts';
 import { netQuery } from '#client/features/desk/api/net-queries.ts';
 import { ChosenLineBar } from '#client/features/desk/components/chosen-line-bar.tsx';
 import { ConflictDialog } from '#client/features/desk/components/conflict-dialog.tsx';
@@ -19,7 +20,6 @@ import { useSavingMoments } from '#client/features/desk/components/use-saving-mo
 import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { downloadFrom } from '#client/lib/download.ts';
-import { apiUrl } from '#client/lib/http.ts';
 import { paths } from '#client/lib/paths.ts';
 import { useMedia } from '#client/lib/use-media.ts';
 import { commonText } from '#client/text/common.ts';
@@ -143,7 +143,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             <FiguresPane
               store={store}
               netName={`${sectionName} ${detail.net.name}`}
-              onDownload={() => void flush().then(() => downloadFrom(apiUrl(`/nets/${netId}/schedule.csv`)))}
+              onDownload={(what) => void flush().then(() => downloadFrom(netDownloadUrl(netId, what)))}
               onForm={readOnly ? null : (form) => show({ shows: 'form', form })}
               onSheet={() => setPane('sheet')}
             />

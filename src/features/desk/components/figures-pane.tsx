@@ -3,6 +3,7 @@ import { exitsText } from '#client/text/exits.ts';
 import { profileText } from '#client/text/profiles.ts';
 import { scheduleText } from '#client/text/schedule.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
+import type { NetDownload } from './download-menu.tsx';
 import { ExitsPane } from './exits-pane.tsx';
 import type { MarginForm } from './margin-form.tsx';
 import { ProfilesPane } from './profiles-pane.tsx';
@@ -19,8 +20,7 @@ interface FiguresPaneProps {
   store: DeskStore;
   /** Name of the net, for the files that are made of its tables. */
   netName: string;
-  /** Downloads the schedule as CSV. */
-  onDownload: () => void;
+  onDownload: (what: NetDownload) => void;
   /** Opens a form in the margin; null where nothing may be added. */
   onForm: ((form: MarginForm) => void) | null;
   /** Shows the sheet, where it is not beside the table already. */

@@ -4,10 +4,12 @@ import { useNotice } from '#client/components/notice.tsx';
 import { copyText } from '#client/lib/copy-text.ts';
 import { downloadText } from '#client/lib/download.ts';
 import { sentenceText } from '#client/lib/figures.ts';
+import { localeStore } from '#client/lib/locale.ts';
 import { profileText as text } from '#client/text/profiles.ts';
 import { scheduleText } from '#client/text/schedule.ts';
 import { entitiesOf } from '#shared/contract/document.ts';
 import type { ProfileReading } from '#shared/contract/reading-quantities.ts';
+import { BYTE_ORDER_MARK } from '#shared/text/csv.ts';
 import { cleanFileName } from '#shared/text/file-name.ts';
 import { profileCsv, profileRows } from '#shared/text/profile-csv.ts';
 import type { DeskStore } from '../model/desk-state.ts';
@@ -112,10 +114,9 @@ function TakeAway({ store, read, netName }: { store: DeskStore; read: ProfileRea
     notice(done ? text.copied : text.notCopied);
   };
   const download = () => {
-    const csv = profileCsv(store.getState().document, read);
+    const csv = profileCsv(store.getState().document, read, localeStore.getState().mark);
     const name = cleanFileName(text.fileName(netName, read.name));
-    // With the byte order mark a spreadsheet reads the signs and units as they are.
-    downloadText(`\uFEFF${csv}`, `${name}.csv`, 'text/csv;charset=utf-8');
+    downloadText(BYTE_ORDER_MARK + csv, `${name}.csv`, 'text/csv;charset=utf-8');
   };
   return (
     <>

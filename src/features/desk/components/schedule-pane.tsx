@@ -9,6 +9,7 @@ import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading, PointReading } from '#shared/contract/reading.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import { DownloadMenu, type NetDownload } from './download-menu.tsx';
 import { Schedule } from './schedule.tsx';
 import type { Edit } from './schedule-edits.ts';
 import {
@@ -27,8 +28,7 @@ const LONG = 8;
 
 interface SchedulePaneProps {
   store: DeskStore;
-  /** Downloads the schedule as CSV. */
-  onDownload: () => void;
+  onDownload: (what: NetDownload) => void;
   /** Opens the form for a typed point; null where nothing may be added. */
   onAdd: (() => void) | null;
   /** Shows the sheet, where it is not beside the table already. */
@@ -108,7 +108,7 @@ export function SchedulePane({
           ) : null}
           {onAdd ? <SmallButton onClick={onAdd}>{text.add}</SmallButton> : null}
           <SmallButton onClick={() => void copy()}>{text.copy}</SmallButton>
-          <SmallButton onClick={onDownload}>{text.download}</SmallButton>
+          <DownloadMenu canDraw={reading?.setOut.state === 'fitted'} onDownload={onDownload} />
         </span>
       </div>
       <ScheduleState reading={reading} failed={readingFailed} />
