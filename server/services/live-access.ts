@@ -27,6 +27,6 @@ export async function loadLiveAccess(
 
 /** Whether an event concerns this person: the same rule as `dam.read`, or what is about themselves. */
 export function mayHear(access: LiveAccess, event: LiveEvent): boolean {
-  if (event.type === 'person') return event.personId === access.personId;
+  if (event.type === 'person' || event.type === 'notesRead') return event.personId === access.personId;
   return access.admin || access.damIds.has(event.damId);
 }

@@ -15,5 +15,7 @@ export const liveEvent = z.discriminatedUnion('type', [
   z.object({ type: z.literal('dam'), damId: id }),
   // Told to that person only: their sign-in or their parts changed, so ask `GET /session` and the lists again.
   z.object({ type: z.literal('person'), personId: id }),
+  // Told to that person only: they have read notes of the net, in this window or another.
+  z.object({ type: z.literal('notesRead'), personId: id, netId: id }),
 ]);
 export type LiveEvent = z.infer<typeof liveEvent>;
