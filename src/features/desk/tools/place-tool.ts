@@ -2,6 +2,7 @@ import { deskToolText as text } from '#client/text/desk-tools.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { type EntityOf, entitiesOf, UNSAID } from '#shared/contract/document.ts';
 import type { NoteAnchor } from '#shared/contract/notes.ts';
+import { cellAt } from '../model/cell-places.ts';
 import { selectOne } from '../model/selection.ts';
 import { dragTo, grabMark, letGo } from './drag.ts';
 import { drawnCrossingAt } from './drawn-crossing.ts';
@@ -119,19 +120,20 @@ function freeName(letter: string, points: ReadonlyArray<{ value: { name: string 
   return `${letter}${n}`;
 }
 
-/** Begins a note at a reading point, a line or a bare place; writing it is the notes' affair. */
+/** Begins a note at a reading point, a line, a profile, a cell or a bare place; writing it is the notes' affair. */
 export function noteStep(state: ToolState, event: ToolEvent, context: ToolContext): ToolStep {
   if (event.type === 'cancel') return rest({ do: 'tool', tool: 'select', boundary: null });
   if (event.type !== 'click' || event.count > 1) return stay(state);
   const picked = pickAt(context, event.at);
   if (picked?.kind === 'note') return rest({ do: 'intent', intent: { type: 'openNote', noteId: picked.id } });
-  return rest({ do: 'intent', intent: { type: 'writeNote', anchor: anchorAt(event.at, picked) } });
+  return rest({ do: 'intent', intent: { type: 'writeNote', anchor: anchorAt(event.at, picked, context) } });
 }
 
-function anchorAt(at: SheetPx, picked: ReturnType<typeof pickAt>): NoteAnchor {
+function anchorAt(at: SheetPx, picked: ReturnType<typeof pickAt>, { document }: ToolContext): NoteAnchor {
   if (picked?.kind === 'readingPoint')
     return { on: 'readingPoint', entityId: picked.id, at: keptPoint(picked.at) };
-  if (picked?.kind === 'line')
-    return { on: 'line', entityId: picked.id, at: keptPoint(sheetPx(picked.at[0], picked.at[1])) };
-  return { on: 'place', at: keptPoint(at) };
+  if (picked?.kind === 'line' || picked?.kind === 'profile')
+    return { on: picked.kind, entityId: picked.id, at: keptPoint(sheetPx(picked.at[0], picked.at[1])) };
+  const place = keptPoint(at);
+  return cellAt(document, place) ?? { on: 'place', at: place };
 }

@@ -5,7 +5,7 @@ import type { BoundaryKind, ToolId } from '#client/features/desk/model/tool-choi
 import { createToolHost } from '#client/features/desk/tools/tool-host.ts';
 import type { Modifiers } from '#client/features/desk/tools/tool-types.ts';
 import { sheetPx } from '#shared/compute/frames.ts';
-import { type DocumentEntity, entitiesOf, UNSAID } from '#shared/contract/document.ts';
+import { type DocumentEntity, entitiesOf, type TracedLine, UNSAID } from '#shared/contract/document.ts';
 import {
   countedIds,
   documentWith,
@@ -394,6 +394,42 @@ describe('known points, reading points and notes', () => {
       { type: 'writeNote', anchor: { on: 'place', at: [800, 300] } },
       { type: 'openNote', noteId: 'note-1' },
     ]);
+  });
+
+  it('begins a note on a profile, and on the cell in which a bare place lies', () => {
+    const ids = ['h1', 'h2', 'f1', 'f2'];
+    const side = (line: TracedLine['line'], from: [number, number], to: [number, number]) =>
+      tracedLine([from, to], { line });
+    const hand = desk(
+      {
+        h1: side('equipotential', [100, 100], [100, 400]),
+        h2: side('equipotential', [300, 100], [300, 400]),
+        f1: side('flowLine', [50, 150], [350, 150]),
+        f2: side('impervious', [50, 350], [350, 350]),
+        base: {
+          kind: 'profile',
+          name: '',
+          use: 'base',
+          place: {
+            on: 'sheet',
+            points: [
+              [500, 500],
+              [700, 500],
+            ],
+          },
+          spacing: null,
+          finished: true,
+          order: 1,
+        },
+      },
+      'note',
+    );
+    hand.click(600, 502);
+    hand.click(200, 250);
+    const [onProfile, inCell] = hand.intents.map((intent) => 'anchor' in intent && intent.anchor);
+    expect(onProfile).toEqual({ on: 'profile', entityId: 'base', at: [600, 500] });
+    expect(inCell).toMatchObject({ on: 'cell', at: [200, 250] });
+    if (inCell && inCell.on === 'cell') expect([...inCell.heads, ...inCell.flows].sort()).toEqual(ids.sort());
   });
 
   it('asks for the magnified view while known points are placed', () => {
