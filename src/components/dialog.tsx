@@ -6,10 +6,12 @@ interface DialogProps {
   onClose?: (() => void) | undefined;
   children: ReactNode;
   wide?: boolean;
+  /** As wide as a page, for tables. */
+  full?: boolean;
 }
 
 /** A modal dialog of the browser's own: it holds the focus, gives it back, and Escape closes it. Shown while mounted. */
-export function Dialog({ title, onClose, children, wide = false }: DialogProps) {
+export function Dialog({ title, onClose, children, wide = false, full = false }: DialogProps) {
   const ref = useRef<HTMLDialogElement>(null);
   const titleId = useId();
   useEffect(() => {
@@ -27,7 +29,7 @@ export function Dialog({ title, onClose, children, wide = false }: DialogProps) 
         onClose?.();
       }}
       className={`m-auto max-h-[calc(100dvh-24px)] w-[calc(100vw-24px)] overflow-auto rounded-sheet border border-ink bg-film p-0 text-ink ${
-        wide ? 'max-w-[860px]' : 'max-w-[480px]'
+        full ? 'max-w-[1240px]' : wide ? 'max-w-[860px]' : 'max-w-[480px]'
       }`}
     >
       <h2 id={titleId} className="m-0 border-b border-rule px-4 py-2.5 text-md font-bold">

@@ -6,6 +6,7 @@ const en = {
     revision === '' ? number : `${number} rev ${revision}`,
   untitledDrawing: 'Drawing',
   sheetLabel: (section: string, drawing: string) => `${section} on drawing ${drawing}`,
+  skipToSheet: 'Go to the sheet',
   panes: { sheet: 'Sheet', schedule: 'Schedule', notes: 'Notes', block: 'Title block' },
   formPane: 'Form',
   panesLabel: 'Parts of the desk',

@@ -16,7 +16,7 @@ export type PointerWords = {
 const en = {
   sheetRole: 'drawing',
   keysHelp:
-    'Arrow keys move the sheet, plus and minus zoom, zero shows it whole. Letters choose tools: K known points, E equipotential, F flow line, P phreatic line, B boundary, R reading point, L profile, M ruler, N note. G shows the grid of offsets and elevations. Enter finishes a line, Backspace takes back its last point, Escape cancels. H lists what is on the sheet by kind, Q tells what stands at the pointer.',
+    'Question mark lists all keys. C shows a crosshair that arrow keys move and Space clicks; with a tool in hand arrow keys show it by themselves. Without it arrow keys move the sheet, plus and minus zoom, zero shows it whole. Letters choose tools: K known points, E equipotential, F flow line, P phreatic line, B boundary, R reading point, L profile, M ruler, N note. Enter finishes a line, Backspace takes back its last point, Escape cancels. Q tells what stands at the crosshair, Shift and H opens lines and points as a table, F6 goes to the next part of the desk.',
   zoomIn: 'Zoom in',
   zoomOut: 'Zoom out',
   fit: 'Fit',

@@ -1,5 +1,6 @@
 import { type ReactNode, useId } from 'react';
 import { classNames } from '#client/components/class-names.ts';
+import { focusSheet, usePartKeys } from '#client/features/desk/components/part-keys.ts';
 import { type PaneId, panePx } from '#client/features/desk/model/pane-sizes.ts';
 import { deskPageText as text } from '#client/text/desk-page.ts';
 import { DeskPaneEdge } from './desk-pane-edge.tsx';
@@ -34,13 +35,21 @@ interface DeskGridProps {
  * keeps its view.
  */
 export function DeskGrid(props: DeskGridProps) {
+  usePartKeys();
   return (
-    <main id="content" className="flex min-h-0 flex-1 flex-col">
+    <main id="content" tabIndex={-1} className="flex min-h-0 flex-1 flex-col">
       <h1 className="sr-only">{props.heading}</h1>
+      <button type="button" className={SKIP_LINK} onClick={focusSheet}>
+        {text.skipToSheet}
+      </button>
       {props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />}
     </main>
   );
 }
+
+/** Seen only while it has the focus; takes no room then either. */
+const SKIP_LINK =
+  'sr-only focus:not-sr-only focus:absolute focus:top-1 focus:left-1 focus:z-20 focus:border focus:border-ink focus:bg-film focus:px-3 focus:py-1';
 
 function WideGrid({ tools, lines, sheet, schedule, notes, block, panes }: DeskGridProps) {
   const id = useId();
@@ -55,17 +64,19 @@ function WideGrid({ tools, lines, sheet, schedule, notes, block, panes }: DeskGr
     >
       <div
         id={`${id}tools`}
+        data-desk-part
         className={shown('tools', 'col-start-1 row-start-1 flex flex-col border-r border-rule')}
       >
         {tools}
       </div>
       <div className="relative col-start-2 row-start-1 flex min-h-0 min-w-0 flex-col">
-        <div className="flex min-h-0 min-w-0 flex-1 flex-col">
+        <div data-desk-part className="flex min-h-0 min-w-0 flex-1 flex-col">
           {lines}
           {sheet}
         </div>
         <div
           id={`${id}figures`}
+          data-desk-part
           className={shown('figures', 'min-w-0 shrink-0 border-t border-rule')}
           style={{ height: px('figures') }}
         >
@@ -75,13 +86,16 @@ function WideGrid({ tools, lines, sheet, schedule, notes, block, panes }: DeskGr
       </div>
       <aside
         id={`${id}margin`}
+        data-desk-part
         className={shown(
           'margin',
           'col-start-3 row-start-1 flex flex-col border-l-[1.5px] border-ink bg-film',
         )}
       >
         {notes}
-        <div className="max-h-[60%] shrink-0 overflow-y-auto">{block}</div>
+        <div data-desk-part className="max-h-[60%] shrink-0 overflow-y-auto">
+          {block}
+        </div>
       </aside>
       <DeskPaneEdge pane="tools" side="left" paneId={`${id}tools`} panes={panes} />
       <DeskPaneEdge pane="margin" side="right" paneId={`${id}margin`} panes={panes} />
@@ -99,12 +113,22 @@ function NarrowGrid(props: DeskGridProps) {
       {lines}
       <div className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)] grid-rows-[minmax(0,1fr)]">
         <div className={place('sheet')}>
-          <div className="shrink-0 border-b border-rule">{tools}</div>
-          {sheet}
+          <div data-desk-part className="shrink-0 border-b border-rule">
+            {tools}
+          </div>
+          <div data-desk-part className="flex min-h-0 flex-1 flex-col">
+            {sheet}
+          </div>
         </div>
-        <div className={place('schedule')}>{schedule}</div>
-        <div className={classNames(place('notes'), 'bg-film')}>{notes}</div>
-        <div className={classNames(place('block'), 'overflow-y-auto bg-film')}>{block}</div>
+        <div data-desk-part className={place('schedule')}>
+          {schedule}
+        </div>
+        <div data-desk-part className={classNames(place('notes'), 'bg-film')}>
+          {notes}
+        </div>
+        <div data-desk-part className={classNames(place('block'), 'overflow-y-auto bg-film')}>
+          {block}
+        </div>
       </div>
       <PaneSwitch panes={PANES} names={names} pane={pane} onPane={onPane} />
     </>

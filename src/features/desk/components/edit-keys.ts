@@ -1,11 +1,12 @@
-import type { SheetPoint } from '#shared/contract/document.ts';
+import type { KeyId } from '#client/text/keys.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import type { EditEvent, LineOp } from '../model/pending-edit.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import { stepAsSeen } from '../model/viewport.ts';
+import { ARROW_STEPS, arrowsWith, type KeyBinding, runKey } from './key-binding.ts';
 
 /** Keys of what can be done with the chosen line. */
-export const EDIT_KEYS: Readonly<Record<string, LineOp>> = {
+export const EDIT_KEYS: Readonly<Record<string, LineOp & KeyId>> = {
   s: 'split',
   j: 'join',
   t: 'trim',
@@ -18,35 +19,43 @@ const WITH_CTRL: Readonly<
   Record<string, Extract<EditEvent['type'], 'chooseAll' | 'copy' | 'paste' | 'duplicate'>>
 > = { a: 'chooseAll', c: 'copy', v: 'paste', d: 'duplicate' };
 
-const NUDGES: Readonly<Record<string, SheetPoint>> = {
-  ArrowLeft: [-1, 0],
-  ArrowRight: [1, 0],
-  ArrowUp: [0, -1],
-  ArrowDown: [0, 1],
-};
 /** A step of an arrow key with Shift, pixels of the sheet. */
 const FAR_PX = 10;
 
 type Target = { readonly store: DeskStore };
 type SheetTarget = Target & { readonly views: ViewStore };
 
-/** Keys about what is chosen while the sheet has the focus. True when the key was used. */
-export function sheetEditKey(event: KeyboardEvent, { store, views }: SheetTarget): boolean {
-  if (event.altKey) return false;
-  if (event.ctrlKey || event.metaKey) {
-    const type = event.shiftKey ? undefined : WITH_CTRL[event.key.toLowerCase()];
-    if (type === undefined || (store.getState().readOnly && type !== 'chooseAll')) return false;
-    store.requestEdit({ type });
-    return true;
-  }
-  const step = NUDGES[event.key];
-  if (step === undefined || !isMovedByArrows(store.getState())) return false;
-  const times = event.shiftKey ? FAR_PX : 1;
-  store.requestEdit({
-    type: 'nudge',
-    by: stepAsSeen(views.getState().view, step[0] * times, step[1] * times),
-  });
-  return true;
+/** About what is chosen while the sheet has the focus. */
+export const SHEET_EDIT_BINDINGS: readonly KeyBinding<SheetTarget>[] = [
+  nudgeBinding('nudge', 1),
+  nudgeBinding('nudgeFar', FAR_PX),
+  ...Object.entries(WITH_CTRL).map(
+    ([key, type]): KeyBinding<SheetTarget> => ({
+      id: type,
+      group: 'chosen',
+      presses: [{ key, ctrl: true }],
+      run({ store }) {
+        if (store.getState().readOnly && type !== 'chooseAll') return false;
+        store.requestEdit({ type });
+        return true;
+      },
+    }),
+  ),
+];
+
+function nudgeBinding(id: 'nudge' | 'nudgeFar', times: number): KeyBinding<SheetTarget> {
+  return {
+    id,
+    group: 'chosen',
+    presses: arrowsWith(id === 'nudgeFar' ? { shift: true } : {}),
+    run({ store, views }, { key }) {
+      const step = ARROW_STEPS[key];
+      if (step === undefined || !isMovedByArrows(store.getState())) return false;
+      const by = stepAsSeen(views.getState().view, step[0] * times, step[1] * times);
+      store.requestEdit({ type: 'nudge', by });
+      return true;
+    },
+  };
 }
 
 /** Arrow keys move what is chosen; with nothing chosen, or something under way, they move the sheet. */
@@ -55,20 +64,42 @@ function isMovedByArrows({ tool, selection, draft, pendingEdit, readOnly }: Desk
   return selection.kind !== 'none' && selection.kind !== 'soil';
 }
 
-/** An arrow key let go makes the move a step. */
-export function sheetEditKeyUp(event: KeyboardEvent, { store }: Target): void {
-  if (NUDGES[event.key] !== undefined) store.requestEdit({ type: 'settle' });
+/** The operations, anywhere on the desk but in a field; Escape leaves what is asked for. */
+export const DESK_EDIT_BINDINGS: readonly KeyBinding<Target>[] = [
+  {
+    id: 'leaveEdit',
+    group: 'chosen',
+    presses: [{ key: 'Escape' }],
+    run({ store }) {
+      if (store.getState().pendingEdit === null) return false;
+      store.requestEdit({ type: 'leaveEdit' });
+      return true;
+    },
+  },
+  ...Object.entries(EDIT_KEYS).map(
+    ([key, op]): KeyBinding<Target> => ({
+      id: op,
+      group: 'chosen',
+      presses: [{ key }],
+      run({ store }) {
+        if (store.getState().readOnly) return false;
+        store.requestEdit({ type: 'lineOp', op });
+        return true;
+      },
+    }),
+  ),
+];
+
+/** Keys about what is chosen while the sheet has the focus. True when the key was used. */
+export function sheetEditKey(event: KeyboardEvent, target: SheetTarget): boolean {
+  return runKey(SHEET_EDIT_BINDINGS, event, target);
 }
 
-/** Keys of the operations, anywhere on the desk but in a field; Escape leaves what is asked for. */
-export function deskEditKey(event: KeyboardEvent, { store }: Target): boolean {
-  if (event.ctrlKey || event.metaKey || event.altKey || event.shiftKey) return false;
-  if (event.key === 'Escape' && store.getState().pendingEdit !== null) {
-    store.requestEdit({ type: 'leaveEdit' });
-    return true;
-  }
-  const op = EDIT_KEYS[event.key.toLowerCase()];
-  if (op === undefined || store.getState().readOnly) return false;
-  store.requestEdit({ type: 'lineOp', op });
-  return true;
+/** An arrow key let go makes the move a step. */
+export function sheetEditKeyUp(event: KeyboardEvent, { store }: Target): void {
+  if (ARROW_STEPS[event.key] !== undefined) store.requestEdit({ type: 'settle' });
+}
+
+export function deskEditKey(event: KeyboardEvent, target: Target): boolean {
+  return runKey(DESK_EDIT_BINDINGS, event, target);
 }

@@ -1,5 +1,6 @@
 import { useMemo } from 'react';
 import { useStore } from 'zustand';
+import { entityTableText } from '#client/text/entity-table.ts';
 import { sheetAidsText as text } from '#client/text/tracing-aids.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { DeskStore, HideableKind } from '../model/desk-state.ts';
@@ -63,6 +64,15 @@ export function LinesList({ store, noteCount }: { store: DeskStore; noteCount: n
         )}
       </div>
       {readOnly ? null : <AidHint>{text.linesHint}</AidHint>}
+      <button
+        type="button"
+        aria-haspopup="dialog"
+        aria-keyshortcuts="Shift+H"
+        className="touch mt-1.5 underline"
+        onClick={() => store.emitIntent({ type: 'openTable' })}
+      >
+        {entityTableText.open}
+      </button>
     </>
   );
 }

@@ -8,9 +8,10 @@ import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import type { HelpShown, LiveHelpSource } from '../model/live-help-source.ts';
 import type { ViewStore } from '../model/view-store.ts';
-import { toScreen } from '../model/viewport.ts';
+import { sheetZoom, toScreen } from '../model/viewport.ts';
 import { headWords, helpWords } from './live-help-words.ts';
 import { wordsAt } from './pointer-readout.tsx';
+import { thingWords } from './thing-words.ts';
 
 type LiveHelpProps = {
   store: DeskStore;
@@ -26,7 +27,7 @@ export function LiveHelp({ store, views, source, touched }: LiveHelpProps) {
   return (
     <>
       {shown === null ? null : <Beside store={store} views={views} shown={shown} touched={touched} />}
-      <Told store={store} source={source} />
+      <Told store={store} views={views} source={source} />
     </>
   );
 }
@@ -83,24 +84,30 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
 }
 
 /** Tells, when it is asked, what stands at the pointer. */
-function Told({ store, source }: Pick<LiveHelpProps, 'store' | 'source'>) {
+function Told({ store, views, source }: Omit<LiveHelpProps, 'touched'>) {
   const [told, setTold] = useState('');
   useEffect(() => {
     // The same words again are only told when they are not quite the same text.
     const tell = (words: string) => setTold((now) => (now === words ? `${words}\u00a0` : words));
     return store.onIntent((intent) => {
-      if (intent.type === 'tellPlace') void wordsNow(store, source).then(tell);
+      if (intent.type === 'tellPlace')
+        void wordsNow(store, source, sheetZoom(views.getState().view)).then(tell);
     });
-  }, [store, source]);
+  }, [store, views, source]);
   return <output className="sr-only">{told}</output>;
 }
 
-async function wordsNow(store: DeskStore, source: LiveHelpSource): Promise<string> {
+/** As near as a click would be taken for it, screen pixels. */
+const REACH_PX = 8;
+
+async function wordsNow(store: DeskStore, source: LiveHelpSource, zoom: number): Promise<string> {
   const { shown } = source.state.getState();
   const { pointerAt, document } = store.getState();
   const at = shown?.at ?? (pointerAt === null ? null : sheetPx(...pointerAt));
   if (at === null) return text.nothing;
-  const place = wordsOfPlace(at, document, readSetOut(document));
+  const setOut = readSetOut(document);
+  const thing = thingWords(store.getState(), setOut.map, at, REACH_PX / zoom);
+  const place = [...(thing === null ? [] : [thing]), ...wordsOfPlace(at, document, setOut)];
   const read = await store.headAt([at[0], at[1]]);
   const head = read === null ? null : { ...read, at };
   const words =

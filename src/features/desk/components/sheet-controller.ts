@@ -2,6 +2,7 @@ import { type ScreenPx, type SheetPx, sheetPx } from '#shared/compute/frames.ts'
 import { planeInverse, SAME_PLACE, throughPlane } from '#shared/compute/plane-map.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import { clickedPlacesOf } from '../model/clicked-places.ts';
+import type { CrosshairStore } from '../model/crosshair.ts';
 import { createCrossingClient } from '../model/crossing-client.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { drawingWayChoice } from '../model/drawing-way.ts';
@@ -24,6 +25,7 @@ import { itemsThrough } from '../render/seen-through.ts';
 import { createSheetRenderer, type SheetRenderer } from '../render/sheet-renderer.ts';
 import { createToolHost, type HostView, type ToolHost } from '../tools/tool-host.ts';
 import type { Balloon, Modifiers } from '../tools/tool-types.ts';
+import { createCrosshairHand } from './crosshair-hand.ts';
 import { deskKey, isTyping, sheetKey } from './desk-keys.ts';
 import { sheetEditKeyUp } from './edit-keys.ts';
 import { attachGestures } from './pointer-gestures.ts';
@@ -43,6 +45,7 @@ export type SheetControllerOptions = {
   notes(): readonly NoteBalloon[];
   /** What is told beside the pointer; follows it from here. */
   readonly help: LiveHelpSource;
+  readonly crosshair: CrosshairStore;
   /** Place being set with the magnified view, or null. */
   onFollow(at: SheetPx | null): void;
   onPanning(panning: boolean): void;
@@ -62,7 +65,7 @@ export type SheetController = {
 /** Holds a sheet view together outside of React: stores to scenes, pointers and keys to tools. */
 export function createSheetController(options: SheetControllerOptions): SheetController {
   const { element, sheet, store, views } = options;
-  const renderer = createSheetRenderer(options.layers, options.raster);
+  const renderer = createSheetRenderer(options.layers, options.raster, () => showScene());
   const ink = createInkClient(sheet);
   const crossings = createCrossingClient(sheet);
   const grid = createGridLayer(options.layers);
@@ -139,7 +142,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     const measured = tool === 'ruler' ? rulerItems(rulerOf(store).getState()) : [];
     const pointedAt = itemsThrough([...measured, ...underPointer], view().seenAs ?? null);
     renderer.showActive([...active, ...crowdedAtPointer(), ...pointedAt]);
-    const magnified = (overlay.magnify || fingerHolds) && pointer !== null;
+    const pointsByKeys = options.crosshair.getState().at !== null;
+    const magnified = (overlay.magnify || fingerHolds || pointsByKeys) && pointer !== null;
     options.help.follow(pointer?.at ?? null, overlay, sheetZoom(view()));
     options.onFollow(magnified ? (overlay.drawnCrossing ?? overlay.snap?.at ?? pointer!.at) : null);
   }
@@ -150,6 +154,11 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     const lineId = host.lineAt(pointer.at, { ...pointer.view, zoom: sheetZoom(view()) });
     const label = lineId === null ? undefined : crowded.get(`${LABEL_PREFIX}${lineId}`);
     return label === undefined ? [] : [label];
+  }
+
+  /** A mouse that lies still leaves the sheet to the crosshair. */
+  function followMouse(at: SheetPx | null, keys: Modifiers, view: HostView): void {
+    if (options.crosshair.getState().at === null) followPointer(at, keys, view);
   }
 
   function followPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void {
@@ -173,7 +182,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     if (event.defaultPrevented || isTyping(event.target)) return;
     const inSheet = event.target === element;
     const used =
-      (inSheet && sheetKey(event, { store, views, host, hostView: keyView })) || deskKey(event, { store });
+      (inSheet && sheetKey(event, { store, views, host, hostView: keyView, crosshair: hand })) ||
+      deskKey(event, { store });
     if (used) event.preventDefault();
   }
 
@@ -183,17 +193,27 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
 
   ink.onLook(() => pointer !== null && showOverlay());
   crossings.onLook(() => pointer !== null && showOverlay());
+  const hand = createCrosshairHand({
+    element,
+    store,
+    views,
+    host,
+    crosshair: options.crosshair,
+    hostView: keyView,
+    onPointer: followPointer,
+  });
   const sizes = new ResizeObserver(() => views.resize(element.clientWidth, element.clientHeight));
   sizes.observe(element);
   views.resize(element.clientWidth, element.clientHeight);
   const endings = [
+    hand.end,
     attachGestures({
       element,
       views,
       host,
       balloons,
       places,
-      onPointer: followPointer,
+      onPointer: followMouse,
       onPanning: options.onPanning,
       onFinger: holdByFinger,
     }),
@@ -213,8 +233,9 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     views.subscribe((state, before) => {
       renderer.setView(state.view);
       showGrid();
+      // What depends on the zoom is made anew once it rests; the renderer tells.
       const { zoom, seenAs } = state.view;
-      if (zoom !== before.view.zoom || seenAs !== before.view.seenAs) dueScene();
+      if (seenAs !== before.view.seenAs || isLeap(zoom / before.view.zoom)) dueScene();
     }),
   ];
   element.ownerDocument.addEventListener('keydown', key);

@@ -4,6 +4,7 @@ import { classNames } from '#client/components/class-names.ts';
 import { deskViewText as text } from '#client/text/desk-view.ts';
 import type { ScreenPx, SheetPx } from '#shared/compute/frames.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
+import { createCrosshair } from '../model/crosshair.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { createLiveHelp } from '../model/live-help-source.ts';
 import { rasterOf, type SheetRaster } from '../model/sheet-raster.ts';
@@ -12,9 +13,13 @@ import { createViewStore } from '../model/view-store.ts';
 import { type SheetFrame, toScreen, type Viewport } from '../model/viewport.ts';
 import type { NoteBalloon } from '../render/build-scene.ts';
 import { aboveFinger } from './above-finger.ts';
+import { CrosshairBar } from './crosshair-bar.tsx';
+import { CrosshairMark } from './crosshair-mark.tsx';
 import { DraftActions } from './draft-actions.tsx';
 import { EditPrompt } from './edit-prompt.tsx';
+import { EntityTableDialog } from './entity-table-dialog.tsx';
 import { GridSwitch } from './grid-switch.tsx';
+import { KeyListDialog } from './key-list.tsx';
 import { LiveHelp } from './live-help.tsx';
 import { MAGNIFIER_SIDE_PX, Magnifier } from './magnifier.tsx';
 import { PictureButton } from './picture-button.tsx';
@@ -68,6 +73,7 @@ export function SheetView({
   const outline = useRef(frame);
   const [shown] = useState(() => raster ?? rasterOf(sheet, true));
   const [views] = useState(() => createViewStore(shown, frame));
+  const [crosshair] = useState(createCrosshair);
   const help = useMemo(() => createLiveHelp(store), [store]);
   const [controller, setController] = useState<SheetController | null>(null);
   const [follow, setFollow] = useState<SheetPx | null>(null);
@@ -88,6 +94,7 @@ export function SheetView({
       views,
       notes: () => shownNotes.current,
       help,
+      crosshair,
       onFollow: setFollow,
       onPanning: setPanning,
       onFinger: setFinger,
@@ -97,7 +104,7 @@ export function SheetView({
       setController(null);
       made.destroy();
     };
-  }, [opened, shown, store, views, help]);
+  }, [opened, shown, store, views, help, crosshair]);
 
   useEffect(() => {
     // A cleaned-up picture is made when its sheet is ready.
@@ -112,6 +119,8 @@ export function SheetView({
   return (
     <div
       ref={element}
+      // By which the link at the head of the page and the keys find it.
+      data-sheet
       role="application"
       aria-label={label}
       aria-describedby={helpId}
@@ -128,6 +137,7 @@ export function SheetView({
         {text.keysHelp}
       </span>
       <LiveHelp store={store} views={views} source={help} touched={finger !== null} />
+      <CrosshairMark crosshair={crosshair} views={views} />
       <RulerAtPointer store={store} views={views} />
       <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 md:flex-nowrap [&>*]:pointer-events-auto">
         {/* Its room is kept while it is not there, so that the buttons stay where they are. */}
@@ -150,6 +160,12 @@ export function SheetView({
       <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
         <div className="flex flex-col items-start gap-2">
           <HiddenHint store={store} />
+          <CrosshairBar
+            store={store}
+            crosshair={crosshair}
+            sheet={sheet}
+            onLeave={() => element.current?.focus()}
+          />
           <RulerPanel store={store} />
           <EditPrompt store={store} />
           <DraftActions store={store} onAction={(action) => controller?.act(action)} />
@@ -160,6 +176,8 @@ export function SheetView({
           )}
         </div>
       </div>
+      <KeyListDialog store={store} />
+      <EntityTableDialog store={store} />
       {controller && finger !== null && (
         <div className="absolute" style={aboveFinger(finger, MAGNIFIER_SIDE_PX, views.getState().view)}>
           <Magnifier store={store} renderer={controller.renderer} follow={follow} />

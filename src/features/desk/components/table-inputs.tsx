@@ -12,11 +12,20 @@ interface TableNumberProps {
   shown: string;
   onCommit: (value: number | null) => void;
   disabled?: boolean;
+  /** Whether it may be left empty, which means null. */
+  optional?: boolean;
 }
 
 /** A figure in a table that is edited where it stands; the reason for refusing it stands below it. */
-export function TableNumber({ label, value, shown, onCommit, disabled = false }: TableNumberProps) {
-  const { error, input } = useTypedNumber({ value, shown, onCommit });
+export function TableNumber({
+  label,
+  value,
+  shown,
+  onCommit,
+  disabled = false,
+  optional = false,
+}: TableNumberProps) {
+  const { error, input } = useTypedNumber({ value, shown, onCommit, optional });
   return (
     <>
       <input

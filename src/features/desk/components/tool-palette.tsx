@@ -2,6 +2,7 @@ import { Fragment } from 'react';
 import { useStore } from 'zustand';
 import { classNames } from '#client/components/class-names.ts';
 import { type PaletteTool, deskPaletteText as text } from '#client/text/desk-palette.ts';
+import { keysText } from '#client/text/keys.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { BOUNDARY_KINDS, type BoundaryKind } from '../model/tool-choice.ts';
 import type { HistoryKeeping } from '../saving/keep-history.ts';
@@ -57,6 +58,23 @@ export function ToolPalette({ store, layout = 'column', keeping = null, classNam
       <HistoryButtons store={store} column={column} keeping={keeping} />
       {column && <ToolHint store={store} />}
       {column && <FirstGuess store={store} />}
+      <button
+        type="button"
+        aria-haspopup="dialog"
+        aria-keyshortcuts="?"
+        className={classNames(
+          'flex items-center border-0 bg-transparent text-left hover:bg-hover touch',
+          column ? 'w-full shrink-0 border-t border-rule-2 px-4 py-1.5' : 'px-3 whitespace-nowrap',
+        )}
+        onClick={() => store.emitIntent({ type: 'listKeys' })}
+      >
+        {keysText.open}
+        {column && (
+          <span aria-hidden="true" className="ml-auto text-xs text-ink-2">
+            ?
+          </span>
+        )}
+      </button>
     </nav>
   );
 }

@@ -50,6 +50,11 @@ function placeOf(
   return map.toSheet(axis === 0 ? sectionPt(figure, elevation) : sectionPt(offset, figure));
 }
 
+/** The place on the sheet of two figures: of the section where there is a map, else pixels. */
+export function placeOfFigures(figures: readonly [number, number], map: SectionMap | null): SheetPx {
+  return map === null ? sheetPx(...figures) : map.toSheet(sectionPt(...figures));
+}
+
 /** The line with a point half way to the next one; after the last one as far on as the last step was. */
 export function withPointAfter(line: TracedLine, index: number): TracedLine | null {
   const [before, at, next] = [line.points[index - 1], line.points[index], line.points[index + 1]];

@@ -25,7 +25,6 @@ export function attachWheel(
 
   function space(event: KeyboardEvent): void {
     if (event.code !== 'Space' || event.target !== element) return;
-    event.preventDefault();
     spaceHeld = event.type === 'keydown';
   }
 

@@ -13,4 +13,8 @@ export type DeskIntent =
   /** A line of the computed net was clicked, by its guide. */
   | { type: 'pickComputedLine'; guideId: string }
   | { type: 'showLines' }
-  | { type: 'tellPlace' };
+  | { type: 'tellPlace' }
+  /** Shows the crosshair or puts it away; or lets its place be typed. */
+  | { type: 'crosshair'; wants: 'toggle' | 'place' }
+  | { type: 'listKeys' }
+  | { type: 'openTable' };

@@ -94,7 +94,7 @@ function dragOf(
 /** Follows the pointer, as a preview: the document changes only when it is let go. */
 export function dragTo(state: Dragging, at: SheetPx, keys: Modifiers, context: ToolContext): ToolStep {
   const away = Math.hypot(at[0] - state.pressedAt[0], at[1] - state.pressedAt[1]) * context.zoom;
-  if (!state.moved && away < STEADY_PX) return stay(state);
+  if (!state.moved && away < (context.steadyPx ?? STEADY_PX)) return stay(state);
   const value = valueAt(state, at, keys, context);
   if (value === null) return rest({ do: 'preview', values: {} });
   const values = { [idOf(state.target)]: value };

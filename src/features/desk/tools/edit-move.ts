@@ -46,7 +46,7 @@ export function moveChosen(state: Moving, at: SheetPx, keys: Modifiers, context:
   const to = keys.shift ? constrained(context, state.pressedAt, at) : at;
   const by: SheetPoint = [to[0] - state.pressedAt[0], to[1] - state.pressedAt[1]];
   const away = Math.hypot(at[0] - state.pressedAt[0], at[1] - state.pressedAt[1]) * context.zoom;
-  if (!state.moved && away < STEADY_PX) return stay(state);
+  if (!state.moved && away < (context.steadyPx ?? STEADY_PX)) return stay(state);
   return {
     state: { ...state, by, moved: true },
     commands: [previewOf(movedThings(chosenThings(context), by))],

@@ -32,7 +32,13 @@ import { createInkTurn } from './ways-of-drawing/ink-turn.ts';
 import { lookReach } from './ways-of-drawing/ink-way.ts';
 
 /** What the view around the tools contributes to their context. */
-export type HostView = { zoom: number; reachPx: number; balloons: readonly Balloon[] };
+export type HostView = {
+  zoom: number;
+  reachPx: number;
+  balloons: readonly Balloon[];
+  /** Left out, what is held moves only once the hand does so clearly. */
+  steadyPx?: number;
+};
 
 export type ToolHost = {
   handle(event: ToolEvent, view: HostView): void;

@@ -113,6 +113,8 @@ export type ToolContext = {
   readonly zoom: number;
   /** How near something has to be to be meant, screen pixels: larger for a finger. */
   readonly reachPx: number;
+  /** Less than this is no move but an unsteady hand, screen pixels; left out, as of a mouse. */
+  readonly steadyPx?: number;
   /** The set-out section; null before it is set out. */
   readonly map: SectionMap | null;
   newId(): string;

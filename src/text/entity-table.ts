@@ -1,0 +1,71 @@
+import { deskToolText } from './desk-tools.ts';
+import { inLanguage } from './language.ts';
+
+type Line = Parameters<typeof deskToolText.lineWord>[0];
+
+/** Lines and points of a net as tables that are read and edited without the sheet. */
+const en = {
+  title: 'Lines and points',
+  open: 'Lines and points as a table',
+  close: 'Close',
+  lines: (count: number) => `Lines, ${count}`,
+  readingPoints: (count: number) => `Reading points, ${count}`,
+  knownPoints: (count: number) => `Known points, ${count}`,
+  noLines: 'No lines yet.',
+  noReadingPoints: 'No reading points yet.',
+  noKnownPoints: 'No known points yet.',
+  kind: 'Kind',
+  name: 'Name',
+  drops: 'Drops',
+  head: (unit: string) => `Head, ${unit}`,
+  points: 'Points',
+  state: 'State',
+  findings: 'Found',
+  actions: 'Actions',
+  offset: (unit: string) => `Offset, ${unit}`,
+  elevation: (unit: string) => `Elevation, ${unit}`,
+  x: 'x, px',
+  y: 'y, px',
+  /** A field of a row: its column and whose it is. */
+  fieldOf: (column: string, whose: string) => `${column} of ${whose}`,
+  pointsOf: (count: number, whose: string) => `${count} points of ${whose}: show their figures`,
+  counted: (figure: string) => `${figure} counted`,
+  states: {
+    finished: 'finished',
+    unfinished: 'unfinished',
+    hidden: 'hidden',
+    locked: 'locked',
+    guessed: 'first guess',
+    adopted: 'adopted from the computed net',
+  },
+  nothingFound: '–',
+  show: 'Show',
+  showNamed: (whose: string) => `Show ${whose} on the sheet`,
+  remove: 'Remove',
+  removeNamed: (whose: string) => `Remove ${whose}`,
+  numbered: (kind: string, number: number) => `${kind} ${number}`,
+  unnamedPoint: 'unnamed point',
+  add: 'Add',
+  addLine: 'Add a line',
+  addReadingPoint: 'Add a reading point',
+  addKnownPoint: 'Add a known point',
+  places: 'Its points, one to a line',
+  placesHint: {
+    section: 'Offset and elevation, parted by a tab, a semicolon or spaces.',
+    sheet: 'x and y in pixels of the sheet, parted by a tab, a semicolon or spaces.',
+  },
+  twoNeeded: 'A line has at least two points.',
+  tooFar: 'One of the points lies too far off the sheet.',
+  tooMany: (most: string) => `A line has ${most} points at most.`,
+  faultAt: (line: number, fault: string) => `Line ${line}: ${fault}`,
+  labels: {
+    addedLine: (line: Line) => `typed the points of a line: ${deskToolText.lineWord(line)}`,
+    renamedLine: (line: Line) => `named a line: ${deskToolText.lineWord(line)}`,
+    typedHead: (line: Line) => `typed the head of a line: ${deskToolText.lineWord(line)}`,
+    typedDrops: (line: Line) => `typed the drops of a line: ${deskToolText.lineWord(line)}`,
+    knownPoint: (name: string) => `typed known point ${name}`,
+    addedPoint: (name: string) => `added known point ${name} by its pixels`,
+    removed: (whose: string) => `removed ${whose}`,
+  },
+} as const;
+export const entityTableText = inLanguage({ en });
