@@ -67,6 +67,7 @@ const enSheetAidsText = {
   lines: 'Lines',
   snap: 'Snap to',
   view: 'View',
+  more: 'More',
   close: 'Close',
   kinds: KINDS,
   linesTitle: 'On the sheet',

@@ -56,7 +56,7 @@ export function SheetAids({ store, noteCount }: { store: DeskStore; noteCount: n
             aria-controls={aid === open ? panelId : undefined}
             aria-keyshortcuts={aid === 'lines' ? 'H' : undefined}
             className={classNames(
-              'touch border-0 px-2.5 py-1 leading-[1.4] hover:bg-hover',
+              'touch border-0 px-2.5 py-1 leading-[1.4] whitespace-nowrap hover:bg-hover',
               i > 0 && 'border-l border-rule',
               aid === open ? 'bg-chosen font-semibold' : 'bg-transparent',
             )}

@@ -30,6 +30,7 @@ import { RulerPanel } from './ruler-panel.tsx';
 import { SectionViewSwitch } from './section-view-switch.tsx';
 import { HiddenHint, SheetAids } from './sheet-aids.tsx';
 import { createSheetController, type SheetController } from './sheet-controller.ts';
+import { SheetMore } from './sheet-more.tsx';
 import { useOpenedSheet } from './use-opened-sheet.ts';
 import { ZoomBar } from './zoom-bar.tsx';
 
@@ -127,7 +128,7 @@ export function SheetView({
       tabIndex={controller === null ? -1 : 0}
       data-panning={panning || undefined}
       className={classNames(
-        'relative touch-none select-none overflow-hidden bg-desk focus-visible:outline-offset-[-3px]',
+        '@container relative touch-none select-none overflow-hidden bg-desk focus-visible:outline-offset-[-3px]',
         panning ? 'cursor-grabbing' : cursorFor(tool),
         className,
       )}
@@ -139,21 +140,23 @@ export function SheetView({
       <LiveHelp store={store} views={views} source={help} touched={finger !== null} />
       <CrosshairMark crosshair={crosshair} views={views} />
       <RulerAtPointer store={store} views={views} />
-      <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 md:flex-nowrap [&>*]:pointer-events-auto">
+      <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 @2xl:flex-nowrap [&>*]:pointer-events-auto">
         {/* Its room is kept while it is not there, so that the buttons stay where they are. */}
-        <div className="pointer-events-none! order-last flex min-w-32 flex-1 basis-full md:order-none md:basis-0">
+        <div className="pointer-events-none! order-last flex min-w-32 flex-1 basis-full @2xl:order-none @2xl:basis-0">
           <PointerReadout store={store} />
         </div>
-        <div className="ml-auto flex flex-wrap items-start justify-end gap-2">
-          {pictureSwitch}
-          <SectionViewSwitch store={store} views={views} />
-          <GridSwitch store={store} />
-          <SheetAids store={store} noteCount={notes.length} />
-          {picture && (
-            <PictureButton
-              of={{ store, views, raster: newest(shown, sheet), frame, notes, facts: picture }}
-            />
-          )}
+        <div className="pointer-events-none! ml-auto flex flex-wrap items-start justify-end gap-2 [&_[data-over-sheet]]:pointer-events-auto">
+          <SheetMore store={store}>
+            {pictureSwitch}
+            <SectionViewSwitch store={store} views={views} />
+            <GridSwitch store={store} />
+            <SheetAids store={store} noteCount={notes.length} />
+            {picture && (
+              <PictureButton
+                of={{ store, views, raster: newest(shown, sheet), frame, notes, facts: picture }}
+              />
+            )}
+          </SheetMore>
           <ZoomBar views={views} />
         </div>
       </div>

@@ -14,7 +14,7 @@ export function ZoomBar({ views }: { views: ViewStore }) {
       <button type="button" className={BUTTON} aria-label={text.zoomOut} onClick={() => views.zoom(1 / STEP)}>
         −
       </button>
-      <output className="min-w-16 border-x border-rule px-2.5 py-1 text-center">
+      <output className="flex min-w-16 items-center justify-center border-x border-rule px-2.5 py-1">
         {text.zoomShown(zoom)}
       </output>
       <button type="button" className={BUTTON} aria-label={text.zoomIn} onClick={() => views.zoom(STEP)}>
