@@ -65,7 +65,7 @@ export type SheetController = {
 /** Holds a sheet view together outside of React: stores to scenes, pointers and keys to tools. */
 export function createSheetController(options: SheetControllerOptions): SheetController {
   const { element, sheet, store, views } = options;
-  const renderer = createSheetRenderer(options.layers, options.raster, () => showScene());
+  const renderer = createSheetRenderer(options.layers, options.raster, dueScene);
   const ink = createInkClient(sheet);
   const crossings = createCrossingClient(sheet);
   const grid = createGridLayer(options.layers);
@@ -234,8 +234,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       renderer.setView(state.view);
       showGrid();
       // What depends on the zoom is made anew once it rests; the renderer tells.
-      const { zoom, seenAs } = state.view;
-      if (seenAs !== before.view.seenAs || isLeap(zoom / before.view.zoom)) dueScene();
+      if (state.view.seenAs !== before.view.seenAs) dueScene();
     }),
   ];
   element.ownerDocument.addEventListener('keydown', key);

@@ -18,7 +18,12 @@ const AHEAD_TILES = 1;
 /** Device pixels drawn beyond the view's edges: a drag by a hand's width then draws nothing. */
 const MARGIN_DEVICE_PX = 400;
 /** After a pan has rested for so long, what is drawn is centred again for the next one. */
-const REST_MS = 250;
+const PAN_REST_MS = 250;
+/** After a zoom has rested for so long, what was only scaled is drawn at its size; so often while it goes on. */
+const ZOOM_REST_MS = 120;
+const ZOOM_LASTS_MS = 480;
+/** A change of zoom by no more than this is a step of a wheel, a pinch or a button, and more are likely to follow. */
+const ZOOM_STEP = 1.5;
 
 export type SheetRenderer = {
   readonly raster: SheetRaster;
@@ -41,9 +46,15 @@ export type SheetRenderer = {
 
 /**
  * Shows the sheet and what lies over it in a host element: the tiles below, fabric above, both under the same
- * viewport. It draws only when something has changed and at most once a frame.
+ * viewport. It draws only when something has changed and at most once a frame. While the view is being zoomed, what is
+ * there is scaled, because drawing it at each step takes longer than a frame; `onZoom` is called when it is about to be drawn
+ * at its size again, for whatever depends on the zoom.
  */
-export function createSheetRenderer(host: HTMLElement, opened: SheetRaster): SheetRenderer {
+export function createSheetRenderer(
+  host: HTMLElement,
+  opened: SheetRaster,
+  onZoom: () => void = () => {},
+): SheetRenderer {
   // A copy, whose tiles become finer while the sheet is being prepared.
   const sheet = { ...opened };
   const { fonts } = host.ownerDocument;
@@ -55,6 +66,8 @@ export function createSheetRenderer(host: HTMLElement, opened: SheetRaster): She
   let activeDue = false;
   let look = AS_SCANNED;
   let restTimer: ReturnType<typeof setTimeout> | undefined;
+  /** When the steps of zooming began that are going on; null while none are. */
+  let zoomingSince: number | null = null;
 
   const store: TileStore<LoadedTile> = createTileStore({
     load: tileLoader(sheet),
@@ -93,19 +106,46 @@ export function createSheetRenderer(host: HTMLElement, opened: SheetRaster): She
 
   const drawTexts = () => due(true, true);
 
-  function centreAtRest(): void {
+  function drawAtRest(): void {
     clearTimeout(restTimer);
-    if (base.isOffCentre()) restTimer = setTimeout(() => due(true, false), REST_MS);
+    if (zoomingSince !== null) {
+      const left = zoomingSince + ZOOM_LASTS_MS - performance.now();
+      restTimer = setTimeout(endZoom, Math.max(0, Math.min(ZOOM_REST_MS, left)));
+    } else if (base.isOffCentre()) restTimer = setTimeout(() => due(true, false), PAN_REST_MS);
+  }
+
+  function endZoom(): void {
+    zoomingSince = null;
+    onZoom();
+    if (view === null) return;
+    layOutTiles(view, false);
+    due(base.isOffCentre(), active.isOffCentre());
+  }
+
+  function layOutTiles(next: Viewport, zooming: boolean): void {
+    if (tiles.show(next, zooming)) store.want('main', wantedTiles(sheet, next, ratio(), AHEAD_TILES));
+  }
+
+  /** True while steps of zooming follow one another; a leap, as to the whole sheet, is drawn at once. */
+  function isZooming(next: Viewport): boolean {
+    if (view === null || view.widthPx !== next.widthPx || view.heightPx !== next.heightPx) return false;
+    if (view.seenAs !== next.seenAs) return false;
+    const step = next.zoom / view.zoom;
+    return step === 1 ? zoomingSince !== null : step <= ZOOM_STEP && step >= 1 / ZOOM_STEP;
   }
 
   // A canvas takes a fallback font for one that is still loading, and does not draw again by itself.
   fonts.addEventListener('loadingdone', drawTexts);
 
   function setView(next: Viewport): void {
+    const zooming = isZooming(next);
+    const leaps = !zooming && view !== null && view.zoom !== next.zoom;
+    zoomingSince = zooming ? (zoomingSince ?? performance.now()) : null;
     view = next;
-    if (tiles.show(next)) store.want('main', wantedTiles(sheet, next, ratio(), AHEAD_TILES));
-    due(base.show(next), active.show(next));
-    centreAtRest();
+    layOutTiles(next, zooming);
+    due(base.show(next, zooming), active.show(next, zooming));
+    drawAtRest();
+    if (leaps) onZoom();
   }
 
   return {

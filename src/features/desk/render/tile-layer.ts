@@ -21,8 +21,8 @@ export const SQUARES_FROM_ZOOM = 4;
 const VEIL_Z = '100';
 
 export type TileLayer = {
-  /** Takes a view on; true when other tiles or other sizes are in sight than before. */
-  show(view: Viewport): boolean;
+  /** Takes a view on; true when other tiles or other sizes are in sight than before. `zooming`: it is only scaled. */
+  show(view: Viewport, zooming?: boolean): boolean;
   /** A tile has come in: what stood in for it can go. */
   refresh(): void;
   setLook(look: ScanLook): void;
@@ -54,11 +54,17 @@ export function createTileLayer(
   let view: Viewport | null = null;
   let look = AS_SCANNED;
   let laidOut = '';
+  let laidOutAt = 1;
   let shown = new Map<string, HTMLImageElement>();
 
   /** Puts into the layer what the view needs, finer tiles over the coarser ones that stand in. */
   function layOut(): void {
     if (view === null) return;
+    if (view.zoom !== laidOutAt) {
+      // Under way to another zoom, which lays them out anew once it rests.
+      laidOut = '';
+      return;
+    }
     const next = new Map<string, HTMLImageElement>();
     const ratio = devicePixelRatioNow();
     for (const tile of tilesToShow(sheet, store, view, ratio)) {
@@ -78,9 +84,12 @@ export function createTileLayer(
   }
 
   return {
-    show(next) {
+    show(next, zooming = false) {
       view = next;
-      paper.style.transform = layerTransform(next, sheet, devicePixelRatioNow());
+      // Laying the tiles out at another zoom costs tens of milliseconds with software rendering, scaling them nothing.
+      if (!zooming) laidOutAt = next.zoom;
+      paper.style.transform = layerTransform(next, sheet, devicePixelRatioNow(), laidOutAt);
+      if (zooming) return false;
       const key = layoutKey(sheet, next);
       if (key === laidOut) return false;
       laidOut = key;

@@ -7,12 +7,12 @@ import type { SceneItem } from './scene.ts';
 const HEADING_FROM_PX = 1;
 
 export type TraceCanvas = {
-  /** Takes a view on; true when it has to be drawn for it and not only moved. */
-  show(view: Viewport): boolean;
+  /** Takes a view on; true when it has to be drawn for it and not only moved. `zooming`: it is only scaled. */
+  show(view: Viewport, zooming?: boolean): boolean;
   /** Takes a scene on; true when it differs from the one before. */
   showItems(items: readonly SceneItem[]): boolean;
   draw(): void;
-  /** True when a further pan would soon have to draw: to be drawn again once nothing else is going on. */
+  /** True when it is scaled, or a further pan would soon have to draw: to be drawn again once the view rests. */
   isOffCentre(): boolean;
   destroy(): void;
 };
@@ -28,6 +28,7 @@ export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCan
   const element = host.ownerDocument.createElement('canvas');
   element.setAttribute('aria-hidden', 'true');
   Object.assign(element.style, { position: 'absolute', left: '0', top: '0', willChange: 'transform' });
+  element.style.transformOrigin = '0 0';
   element.style.pointerEvents = 'none';
   host.append(element);
   const fabric = new StaticCanvas(element, { renderOnAddRemove: false, enableRetinaScaling: true });
@@ -38,9 +39,10 @@ export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCan
 
   /** Where what is drawn lies now, from the view's corner. */
   function shift(from: Drawn, now: Viewport): readonly [number, number] {
+    const scale = now.zoom / from.view.zoom;
     return [
-      (from.view.origin[0] - now.origin[0]) * now.zoom - marginPx - from.aheadX,
-      (from.view.origin[1] - now.origin[1]) * now.zoom - marginPx - from.aheadY,
+      (from.view.origin[0] - now.origin[0]) * now.zoom - (marginPx + from.aheadX) * scale,
+      (from.view.origin[1] - now.origin[1]) * now.zoom - (marginPx + from.aheadY) * scale,
     ];
   }
 
@@ -50,8 +52,10 @@ export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCan
     return shift(from, now).every((edge) => edge <= 0 && edge >= -2 * marginPx);
   }
 
-  function moveTo([x, y]: readonly [number, number]): void {
-    element.style.transform = `translate(${x}px, ${y}px)`;
+  function move(from: Drawn, now: Viewport): void {
+    const [x, y] = shift(from, now);
+    const scale = now.zoom / from.view.zoom;
+    element.style.transform = `translate(${x}px, ${y}px)${scale === 1 ? '' : ` scale(${scale})`}`;
   }
 
   function ahead(panned: number): number {
@@ -59,12 +63,12 @@ export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCan
   }
 
   return {
-    show(next) {
+    show(next, zooming = false) {
       heading = view === null || view.zoom !== next.zoom ? [0, 0] : panOf(view, next);
       view = next;
       if (fabric.isEmpty()) return drawn !== null;
-      if (drawn === null || !covers(drawn, next)) return true;
-      moveTo(shift(drawn, next));
+      if (drawn === null || !(zooming || covers(drawn, next))) return true;
+      move(drawn, next);
       return false;
     },
     showItems,
@@ -85,10 +89,11 @@ export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCan
       const y = -origin[1] * zoom + marginPx + drawn.aheadY;
       fabric.setViewportTransform([zoom, 0, 0, zoom, x, y]);
       fabric.renderAll();
-      moveTo(shift(drawn, view));
+      move(drawn, view);
     },
     isOffCentre() {
       if (drawn === null || view === null) return false;
+      if (drawn.view.zoom !== view.zoom) return true;
       return shift(drawn, view).some((edge) => Math.abs(edge + marginPx) > marginPx / 2);
     },
     destroy() {

@@ -38,6 +38,22 @@ const slant = mapOfFourPlaces(
 )!;
 
 describe('the transform of the tiles’ layer', () => {
+  it('shows a layer that is still laid out at another zoom where the view shows the sheet', () => {
+    for (const fromBase of [null, slant]) {
+      const raster =
+        fromBase === null ? size : { ...size, fromBase: null, toBase: projectiveInverse(fromBase)! };
+      const now: Viewport = { ...view, origin: sheetPx(-30, 20) };
+      const laidOutAt = 0.3;
+      const transform = layerTransform(now, raster, 1, laidOutAt);
+      for (const place of [sheetPx(10, 20), sheetPx(640, 310)]) {
+        const [x, y] = toScreen(now, place);
+        const onRaster = fromBase === null ? place : throughPlane(fromBase, ...place);
+        const [left, top] = placed(transform, onRaster[0] * laidOutAt, onRaster[1] * laidOutAt);
+        expect(Math.hypot(left - x, top - y)).toBeLessThan(1);
+      }
+    }
+  });
+
   it('only moves a raster that is seen as it is, by whole device pixels', () => {
     const off = { ...view, origin: sheetPx(100.3, 40.1) };
     expect(layerTransform(off, size, 1)).toBe('matrix(1, 0, 0, 1, -50, -20)');
