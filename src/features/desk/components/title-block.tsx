@@ -1,5 +1,6 @@
 import { classNames } from '#client/components/class-names.ts';
 import { sentenceText } from '#client/lib/figures.ts';
+import { notesText } from '#client/text/notes.ts';
 import { titleBlockText as text } from '#client/text/title-block.ts';
 import { Runs } from './runs.tsx';
 import type { CellId, TitleCell } from './title-block-cells.ts';
@@ -31,13 +32,22 @@ interface TitleBlockProps {
   open: CellId | null;
   /** Null on a frozen sheet, where no cell does a step. */
   onStep: ((id: CellId) => void) | null;
+  /** Notes on single cells; left out where none are shown. */
+  notes?: CellNotesOf;
+}
+
+interface CellNotesOf {
+  openOn: (id: CellId) => ReadonlyArray<{ id: string; number: number }>;
+  /** Begins a note on a cell; null for who may not write. */
+  onNote: ((id: CellId) => void) | null;
+  onOpen: (noteId: string) => void;
 }
 
 /**
  * The title block at the foot of the margin: each cell shows one fact and its state, and pressing it does that step.
  * Cells are ruled by a one-pixel gap over ink, so that they close up whatever their height.
  */
-export function TitleBlock({ cells, stale, open, onStep }: TitleBlockProps) {
+export function TitleBlock({ cells, stale, open, onStep, notes }: TitleBlockProps) {
   return (
     <section
       aria-label={text.name}
@@ -45,7 +55,10 @@ export function TitleBlock({ cells, stale, open, onStep }: TitleBlockProps) {
       className="grid shrink-0 grid-cols-8 gap-px border-t-[1.5px] border-ink bg-ink"
     >
       {cells.map((cell) => (
-        <Cell key={cell.id} cell={cell} open={open === cell.id} onStep={onStep} />
+        <div key={cell.id} className={classNames('group relative grid min-w-0', SPANS[cell.id])}>
+          <Cell cell={cell} open={open === cell.id} onStep={onStep} />
+          {notes ? <CellNotes cell={cell} notes={notes} /> : null}
+        </div>
       ))}
     </section>
   );
@@ -58,7 +71,6 @@ function Cell({ cell, open, onStep }: { cell: TitleCell; open: boolean; onStep: 
   const doubtful = cell.state !== 'ok';
   const look = classNames(
     CELL,
-    SPANS[cell.id],
     doubtful ? 'bg-doubt' : 'bg-film',
     open && 'outline-2 -outline-offset-2 outline-focus',
   );
@@ -81,6 +93,44 @@ function Cell({ cell, open, onStep }: { cell: TitleCell; open: boolean; onStep: 
   );
 }
 
+const SIGN =
+  'pointer-events-auto min-h-0 rounded-full border border-ink bg-film px-1.5 text-[11px] leading-[16px] hover:bg-hover';
+
+/** In a cell's corner the balloons of its open notes, and the way to begin one while the cell is pointed at. */
+function CellNotes({ cell, notes }: { cell: TitleCell; notes: CellNotesOf }) {
+  const { onNote } = notes;
+  return (
+    <div className="pointer-events-none absolute top-0.5 right-0.5 flex gap-0.5">
+      {notes.openOn(cell.id).map((note) => (
+        <button
+          key={note.id}
+          type="button"
+          className={classNames(SIGN, 'font-semibold')}
+          aria-label={notesText.noteOn(note.number, notesText.cells[cell.id])}
+          title={notesText.noteOn(note.number, notesText.cells[cell.id])}
+          onClick={() => notes.onOpen(note.id)}
+        >
+          {note.number}
+        </button>
+      ))}
+      {onNote ? (
+        <button
+          type="button"
+          className={classNames(
+            SIGN,
+            'opacity-0 group-hover:opacity-100 focus-visible:opacity-100 pointer-coarse:hidden',
+          )}
+          aria-label={notesText.onCell(notesText.cells[cell.id])}
+          title={notesText.onCell(notesText.cells[cell.id])}
+          onClick={() => onNote(cell.id)}
+        >
+          {notesText.noteSign}
+        </button>
+      ) : null}
+    </div>
+  );
+}
+
 function titleOf(cell: TitleCell): string {
   return [...cell.findings.map((found) => sentenceText(found.text)), text.step[cell.id]].join('\n');
 }
@@ -93,7 +143,7 @@ function Content({ cell }: { cell: TitleCell }) {
   const weight = LIGHT.includes(cell.id) ? '' : 'font-semibold';
   return (
     <>
-      <span className="block text-[11.5px] leading-[1.25] text-ink-2">
+      <span className="block text-[0.72rem] leading-[1.25] text-ink-2">
         {cell.label}
         {cell.state === 'ok' || cell.said ? null : (
           <span className={FACT_COLOURS[cell.state]}> · {text.state[cell.state]}</span>
