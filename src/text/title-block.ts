@@ -35,7 +35,7 @@ const en = {
   upUnclear: 'Which way is up?',
   residualNone: 'None, two points only',
   placeDoubt: (middle: string, corner: string, unit: string) =>
-    `; places ± ${middle}${middle === corner ? '' : ` to ${corner}`} ${unit}`,
+    `; places ± ${middle}${middle === corner ? '' : ` to ${corner}`}\u00a0${unit}`,
   residualLater: 'Not to scale yet',
   levelNeeded: 'Level needed',
   outletNeeded: 'Outlet needed',

@@ -125,7 +125,7 @@ describe('a plate of 1910', () => {
     expect(await form.textContent()).toMatch(/stretched (4\.9\d?|5) times/);
     expect(await form.textContent()).toMatch(/No point alone spoils the fit/);
     expect(await form.textContent()).toMatch(/at the worst corner: offset ± [\d.]+, elevation ± [\d.]+ m/);
-    expect(await cell(page, 'Residual').textContent()).toMatch(/ m; places ± [\d.]+ to [\d.]+ m/);
+    expect(await cell(page, 'Residual').textContent()).toMatch(/ m; places ± [\d.]+ to [\d.]+\sm/);
   });
 
   it('shows which point alone spoils the fit, and mends it', async () => {

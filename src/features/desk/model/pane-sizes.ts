@@ -58,7 +58,7 @@ function usualPx(pane: PaneId, { widthPx }: WindowSize): number {
   if (pane === 'figures') return 232;
   if (pane === 'tools') return widthPx < 1080 ? 168 : 188;
   // On a tablet held upright the sheet would otherwise be as narrow as the notes.
-  if (widthPx < 960) return 264;
+  if (widthPx < 960) return 288;
   return widthPx < 1080 ? 320 : widthPx < 1360 ? 340 : 372;
 }
 

@@ -134,7 +134,7 @@ describe('the title block', () => {
     };
     const { cell } = block({ [ID(1)]: point(100, 0), [ID(2)]: point(600, 50), [ID(3)]: setOut });
     expect(cell('scale')).toBe('Scale: 0.1 m/px [ok]');
-    expect(cell('residual')).toBe('Residual: None, two points only; places ± 0.1 to 0.14 m [question]');
+    expect(cell('residual')).toBe('Residual: None, two points only; places ± 0.1 to 0.14\u00a0m [question]');
   });
 
   it('names the outlets with the head each carries', () => {
