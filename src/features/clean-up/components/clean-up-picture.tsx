@@ -7,6 +7,9 @@ import { previewOf, type SmallSheet } from '../model/preview.ts';
 import { HandleLayer } from './handle-layer.tsx';
 import { PixelCanvas } from './pixel-canvas.tsx';
 
+/** With the panel's head above it the whole picture fits in the window, so that each handle is in reach. */
+const TALLEST = 'max(16rem, 100vh - 10rem)';
+
 type CleanUpPictureProps = {
   small: SmallSheet;
   pageNumber: number;
@@ -37,7 +40,10 @@ export function CleanUpPicture(props: CleanUpPictureProps) {
   return (
     <div
       className="relative mx-auto w-full bg-sheet"
-      style={{ aspectRatio: `${widthPx} / ${heightPx}`, maxWidth: `calc(78vh * ${widthPx / heightPx})` }}
+      style={{
+        aspectRatio: `${widthPx} / ${heightPx}`,
+        maxWidth: `calc(${TALLEST} * ${widthPx / heightPx})`,
+      }}
       onPointerDown={press}
     >
       <PixelCanvas
