@@ -3,8 +3,14 @@ import { DecisionEntity, RevisionEntity } from '#server/entities/ledger-entity.t
 import { notFound } from '#server/errors/app-error.ts';
 import type { Actor, DamScope } from '#server/http/route-record.ts';
 import { allowsOnDam } from '#server/policies/dam-policy.ts';
-import { decisionRefusal } from '#server/policies/revision-policy.ts';
-import type { RevisionDto, RevisionSummary } from '#shared/contract/revisions.ts';
+import {
+  acceptanceWithdrawalRefusal,
+  type DecisionFacts,
+  decisionRefusal,
+  sendingWithdrawalRefusal,
+} from '#server/policies/revision-policy.ts';
+import type { PersonRef } from '#shared/contract/common.ts';
+import type { DecisionDto, RevisionDto, RevisionState, RevisionSummary } from '#shared/contract/revisions.ts';
 import { netActionsFor } from './net-actions.ts';
 import { placeOfNet, putAwayRefusal } from './net-place.ts';
 import { notesOfNet } from './note-queries.ts';
@@ -18,42 +24,52 @@ interface SummaryRow {
   payload_hash: string;
   sent_by: string;
   sender: string;
-  reviewer_id: string;
-  reviewer: string;
-  decision: 'accepted' | 'returned' | null;
-  decided_by: string | null;
-  decider: string | null;
-  note: string | null;
-  decided_at: Date | null;
+  reviewers: PersonRef[];
+  due_on: string | null;
+  state: RevisionState;
+  superseded_by: string | null;
+  decisions: DecisionDto[];
 }
 
+const isAccepted = (state: string) => `${state} IN ('accepted', 'acceptedWithNotes')`;
+
 const SUMMARIES = `
-  SELECT r.id, r.label, r.sent_at, r.payload_hash, r.sent_by, s.name AS sender, r.reviewer_id, v.name AS reviewer,
-    d.decision, d.decided_by, p.name AS decider, d.note, d.decided_at
+  SELECT r.id, r.label, r.sent_at, r.payload_hash, r.sent_by, s.name AS sender, r.due_on::text, t.state,
+    (SELECT json_agg(json_build_object('id', v.id, 'name', v.name) ORDER BY array_position(r.reviewer_ids, v.id))
+      FROM person v WHERE v.id = ANY (r.reviewer_ids)) AS reviewers,
+    (SELECT coalesce(json_agg(json_build_object('decision', d.decision,
+        'decidedBy', json_build_object('id', p.id, 'name', p.name), 'signedName', d.signed_name,
+        'capacity', d.capacity, 'note', d.note, 'decidedAt', d.decided_at) ORDER BY d.decided_at, d.id), '[]')
+      FROM decision d JOIN person p ON p.id = d.decided_by WHERE d.revision_id = r.id) AS decisions,
+    (SELECT n.label FROM revision n WHERE n.net_id = r.net_id AND n.number > r.number
+      AND ${isAccepted('t.state')} AND ${isAccepted('revision_state(n.id)')}
+      ORDER BY n.number LIMIT 1) AS superseded_by
   FROM revision r
   JOIN person s ON s.id = r.sent_by
-  JOIN person v ON v.id = r.reviewer_id
-  LEFT JOIN LATERAL (SELECT * FROM decision c WHERE c.revision_id = r.id ORDER BY c.decided_at LIMIT 1) d ON true
-  LEFT JOIN person p ON p.id = d.decided_by`;
+  CROSS JOIN LATERAL (SELECT revision_state(r.id) AS state) t`;
 
 function toSummary(row: SummaryRow): RevisionSummary {
-  const { decision, decided_by, decider, note, decided_at } = row;
+  const { reviewers, state } = row;
+  const decisions = row.decisions.map((each) => ({
+    ...each,
+    decidedAt: new Date(each.decidedAt).toISOString(),
+  }));
+  const [reviewer] = reviewers;
+  if (!reviewer) throw new Error(`Revision ${row.id} has no reviewer.`);
   return {
     id: row.id,
     label: row.label,
     sentBy: { id: row.sent_by, name: row.sender },
     sentAt: row.sent_at.toISOString(),
-    reviewer: { id: row.reviewer_id, name: row.reviewer },
+    reviewer,
+    reviewers,
+    dueOn: row.due_on,
     hash: row.payload_hash,
-    decision:
-      decision && decided_by && decided_at
-        ? {
-            decision,
-            decidedBy: { id: decided_by, name: decider ?? '' },
-            note: note ?? '',
-            decidedAt: decided_at.toISOString(),
-          }
-        : null,
+    state,
+    // Whatever settles the state is the last record: after it only the withdrawal of an acceptance is taken.
+    decision: state === 'waiting' ? null : (decisions.at(-1) ?? null),
+    decisions,
+    supersededBy: row.superseded_by,
   };
 }
 
@@ -99,31 +115,49 @@ export async function revisionDetail(
 ): Promise<RevisionDto> {
   const { row, payload } = await openRevision(manager, revisionId);
   const place = await placeOfNet(manager, row.netId);
+  const facts = await decisionFacts(manager, row, actor.id);
+  const inUse = putAwayRefusal(place);
+  const isReviewer = allowsOnDam('revision.decide', scope);
   return {
     summary: await revisionSummaryOf(manager, revisionId),
     payload,
     sheet: presentSheet(place.sheet),
-    notes: await notesOfNet(manager, row.netId),
+    notes: await notesOfNet(manager, row.netId, actor.id),
     can: netActionsFor(place, scope),
-    decideRefusal: !allowsOnDam('revision.decide', scope)
-      ? 'Only a reviewer of this dam decides on a revision.'
-      : ((await decisionRefusalFor(manager, row, actor.id))?.text ?? putAwayRefusal(place)?.detail ?? null),
+    decideRefusal: isReviewer
+      ? (decisionRefusal(facts)?.text ?? inUse?.detail ?? null)
+      : 'Only a reviewer of this dam decides on a revision.',
+    canWithdrawAcceptance: isReviewer && acceptanceWithdrawalRefusal(facts) === null,
+    canWithdrawSending:
+      allowsOnDam('net.send', scope) && inUse === null && sendingWithdrawalRefusal(facts.state) === null,
   };
 }
 
-/** What stands in the way of this person's decision; null when nothing does. */
-export async function decisionRefusalFor(manager: EntityManager, row: RevisionEntity, personId: string) {
+/** What the policy needs to know of a revision and a person. */
+export async function decisionFacts(
+  manager: EntityManager,
+  row: RevisionEntity,
+  personId: string,
+): Promise<DecisionFacts> {
   const newest = await manager.findOneOrFail(RevisionEntity, {
     select: { id: true, label: true },
     where: { netId: row.netId },
     order: { number: 'DESC' },
   });
-  return decisionRefusal({
+  const decisions = await manager.findBy(DecisionEntity, { revisionId: row.id });
+  return {
     personId,
-    reviewerId: row.reviewerId,
+    reviewerIds: row.reviewerIds,
     drawnBy: row.drawnBy,
     sentBy: row.sentBy,
-    decided: await manager.existsBy(DecisionEntity, { revisionId: row.id }),
+    state: await revisionStateOf(manager, row.id),
+    decidedBy: decisions.map((each) => each.decidedBy),
     supersededBy: newest.id === row.id ? null : newest.label,
-  });
+  };
+}
+
+/** What the records of a revision come to. */
+export async function revisionStateOf(manager: EntityManager, revisionId: string): Promise<RevisionState> {
+  const [row] = await manager.query('SELECT revision_state($1) AS state', [revisionId]);
+  return row.state;
 }

@@ -13,6 +13,7 @@ type Query = Record<string, string | number | undefined>;
 
 interface CallOptions {
   query?: Query | undefined;
+  /** Sent as JSON; a form with a file as it is. */
   body?: unknown;
   signal?: AbortSignal | undefined;
   /** Statuses besides 2xx whose body is the reply all the same, such as 409 of a batch of commands. */
@@ -78,8 +79,10 @@ async function fetchOnce(
 ) {
   const headers: Record<string, string> = { Accept: 'application/json' };
   if (method !== 'GET') headers['X-CSRF-Token'] = currentCsrfToken();
-  if (body !== undefined) headers['Content-Type'] = 'application/json';
-  const sent = body === undefined ? null : JSON.stringify(body);
+  // A browser writes the type of a form itself, with the mark that parts its fields, and that of a file.
+  const isPlain = body instanceof FormData || body instanceof Blob;
+  if (body !== undefined && !isPlain) headers['Content-Type'] = 'application/json';
+  const sent = body === undefined ? null : isPlain ? body : JSON.stringify(body);
   try {
     return await fetch(apiUrl(path, query), {
       method,

@@ -84,8 +84,9 @@ function Check({ revision }: { revision: RevisionDto }) {
           notes={
             <NetNotes
               netId={payload.netId}
+              damId={payload.dam.id}
               notes={notes}
-              canWrite={revision.can.includes('note.write')}
+              can={revision.can}
               onSheet={() => setPane('sheet')}
             />
           }

@@ -13,6 +13,7 @@ export function useCheckLive({ payload }: RevisionDto): void {
     if (message.type !== 'revisions') {
       void queryClient.invalidateQueries({ queryKey: noteKeys.ofNet(payload.netId) });
     }
-    if (message.type !== 'notes') void queryClient.invalidateQueries({ queryKey: revisionKeys.root });
+    if (message.type !== 'notes' && message.type !== 'notesRead')
+      void queryClient.invalidateQueries({ queryKey: revisionKeys.root });
   });
 }

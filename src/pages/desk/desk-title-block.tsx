@@ -9,6 +9,7 @@ import type { DeskSession } from '#client/features/desk/saving/desk-session.ts';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { paths } from '#client/lib/paths.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
+import type { NoteDto } from '#shared/contract/notes.ts';
 import { titleFactsOf } from './title-facts.ts';
 import type { Margin } from './use-margin.ts';
 import { useSavedAt } from './use-saved-at.ts';
@@ -19,11 +20,13 @@ export function DeskTitleBlock({
   session,
   margin,
   onShow,
+  notes,
 }: {
   detail: NetDetailDto;
   session: DeskSession;
   margin: Margin;
   onShow: (margin: Margin) => void;
+  notes: readonly NoteDto[];
 }) {
   const navigate = useNavigate();
   const { person } = useSession();
@@ -42,8 +45,27 @@ export function DeskTitleBlock({
     else if (id === 'dam') void navigate(paths.dam(detail.dam.id));
     else onShow({ shows: 'revisions' });
   };
-  return <TitleBlock cells={cells} stale={stale} open={openCell(margin)} onStep={step} />;
+  return (
+    <TitleBlock
+      cells={cells}
+      stale={stale}
+      open={openCell(margin)}
+      onStep={step}
+      notes={{
+        openOn: (id) => openNotesOn(notes, id),
+        onNote: detail.can.includes('note.write')
+          ? (cell) => session.store.emitIntent({ type: 'writeNote', anchor: { on: 'titleBlock', cell } })
+          : null,
+        onOpen: (noteId) => session.store.emitIntent({ type: 'openNote', noteId }),
+      }}
+    />
+  );
 }
+
+const openNotesOn = (notes: readonly NoteDto[], cell: CellId) =>
+  notes.filter(
+    ({ anchor, state }) => state !== 'closed' && anchor.on === 'titleBlock' && anchor.cell === cell,
+  );
 
 /** The first cell whose form is open: several cells share one form. */
 function openCell(margin: Margin): CellId | null {

@@ -26,6 +26,7 @@ import { commonText } from '#client/text/common.ts';
 import { deskPageText as text } from '#client/text/desk-page.ts';
 import { sendingText } from '#client/text/revisions.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
+import { namesText } from '#shared/text/names-text.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { DeskGrid } from './desk-grid.tsx';
@@ -165,13 +166,22 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             ) : (
               <NetNotes
                 netId={netId}
+                damId={detail.dam.id}
                 notes={notes}
-                canWrite={detail.can.includes('note.write')}
+                can={detail.can}
                 onSheet={() => setPane('sheet')}
               />
             )
           }
-          block={<DeskTitleBlock detail={detail} session={session} margin={margin} onShow={show} />}
+          block={
+            <DeskTitleBlock
+              detail={detail}
+              session={session}
+              margin={margin}
+              onShow={show}
+              notes={notes.notes}
+            />
+          }
         />
       </AppFrame>
       {dialog === 'compare' && saving ? (
@@ -184,7 +194,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
           onClose={() => setDialog('none')}
           onSent={(revision) => {
             setDialog('none');
-            notice(sendingText.sent(revision.label, revision.reviewer.name));
+            notice(sendingText.sent(revision.label, namesText(revision.reviewers)));
           }}
         />
       ) : null}

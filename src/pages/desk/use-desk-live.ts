@@ -27,7 +27,7 @@ export function useDeskLive(netId: string, session: DeskSession): void {
     if (!('netId' in message) || message.netId !== netId) return;
     if (message.type === 'net' && message.clientId !== session.saving?.clientId) catchUp();
     if (message.type === 'net' && isAsSent(netId, queryClient)) refresh(netKeys.detail(netId));
-    if (message.type === 'notes') refresh(noteKeys.ofNet(netId));
+    if (message.type === 'notes' || message.type === 'notesRead') refresh(noteKeys.ofNet(netId));
     if (message.type === 'revisions') {
       refresh(revisionKeys.root);
       refresh(netKeys.detail(netId));

@@ -1,17 +1,19 @@
 import { useQuery } from '@tanstack/react-query';
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
+import { useLocation } from 'react-router-dom';
 import { useStore } from 'zustand';
 import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
+import { isAnchorGone, placeOfNote } from '#client/features/desk/model/note-places.ts';
 import type { NoteBalloon } from '#client/features/desk/render/build-scene.ts';
 import { notesQuery } from '#client/features/notes/api/note-queries.ts';
 import { notesText } from '#client/text/notes.ts';
-import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NoteAnchor, NoteDto } from '#shared/contract/notes.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 
 const NONE: readonly NoteDto[] = [];
 
-/** The notes of the net as the list and the sheet show them. A balloon follows the point it is anchored to. */
+/** The notes of the net as the list and the sheet show them. A balloon follows what it is anchored to. */
 export function useDeskNotes(netId: string, store: DeskStore) {
   const { data, error } = useQuery(notesQuery(netId));
   const notes = data ?? NONE;
@@ -23,6 +25,12 @@ export function useDeskNotes(netId: string, store: DeskStore) {
     () => balloonsOf(notes, document, reading, chosenId),
     [notes, document, reading, chosenId],
   );
+  const choose = (note: NoteDto) => {
+    setChosenId(note.id);
+    const place = placeOfNote(note.anchor, document, reading);
+    if (place) store.lookAt(place);
+  };
+  useNoteOfAddress(data, choose);
   return {
     notes,
     // What was loaded before stays good enough to show while a later question fails.
@@ -33,11 +41,20 @@ export function useDeskNotes(netId: string, store: DeskStore) {
     setWritingAt,
     setChosenId,
     targetOf: (anchor: NoteAnchor) => targetOf(anchor, document),
-    choose: (note: NoteDto) => {
-      setChosenId(note.id);
-      store.lookAt(placeOf(note.anchor, document, reading));
-    },
+    choose,
   };
+}
+
+/** Chooses the note that the address names, as the link in a mail does, once the notes are there. */
+function useNoteOfAddress(notes: readonly NoteDto[] | undefined, choose: (note: NoteDto) => void): void {
+  const { hash } = useLocation();
+  const [done, setDone] = useState('');
+  useEffect(() => {
+    if (!notes || hash === done) return;
+    setDone(hash);
+    const named = notes.find((note) => hash === `#note-${note.id}`);
+    if (named) choose(named);
+  });
 }
 
 /** Closed notes leave the sheet, unless one is being looked at. */
@@ -47,27 +64,35 @@ function balloonsOf(
   reading: NetReading | null,
   chosenId: string | null,
 ): NoteBalloon[] {
-  return notes
-    .filter((note) => note.state !== 'closed' || note.id === chosenId)
-    .map((note) => ({
-      id: note.id,
-      number: note.number,
-      at: placeOf(note.anchor, document, reading),
-      chosen: note.id === chosenId,
-      ...(note.anchor.on === 'line' ? { lineId: note.anchor.entityId } : {}),
-    }));
-}
-
-function placeOf(anchor: NoteAnchor, document: FlowNetDocument, reading: NetReading | null): SheetPoint {
-  if (anchor.on !== 'readingPoint' || !document.entities[anchor.entityId]) return anchor.at;
-  return reading?.points.find((point) => point.id === anchor.entityId)?.sheetAt ?? anchor.at;
+  return notes.flatMap((note): NoteBalloon[] => {
+    if (note.state === 'closed' && note.id !== chosenId) return [];
+    const at = placeOfNote(note.anchor, document, reading);
+    if (!at) return [];
+    const line = note.anchor.on === 'line' ? { lineId: note.anchor.entityId } : {};
+    return [{ id: note.id, number: note.number, at, chosen: note.id === chosenId, ...line }];
+  });
 }
 
 /** "at P3" for a note on a reading point; what is no longer there is said to be gone. */
 export function targetOf(anchor: NoteAnchor, document: FlowNetDocument): string {
-  if (anchor.on === 'place') return notesText.at.place;
-  const value = document.entities[anchor.entityId]?.value;
-  if (!value) return notesText.gone;
-  if (value.kind === 'readingPoint') return notesText.at.readingPoint(value.name);
-  return value.kind === 'line' && value.name ? notesText.at.readingPoint(value.name) : notesText.at.line;
+  const { at } = notesText;
+  if (isAnchorGone(anchor, document)) return notesText.gone;
+  switch (anchor.on) {
+    case 'place':
+    case 'drawing':
+    case 'cell':
+      return at[anchor.on];
+    case 'titleBlock':
+      return at.titleBlock(notesText.cells[anchor.cell]);
+    default:
+      return targetOfEntity(anchor.entityId, document);
+  }
+}
+
+function targetOfEntity(entityId: string, document: FlowNetDocument): string {
+  const { at } = notesText;
+  const value = document.entities[entityId]?.value;
+  if (value?.kind === 'readingPoint') return at.readingPoint(value.name);
+  if (value?.kind === 'profile') return at.profile(value.name);
+  return value?.kind === 'line' && value.name ? at.readingPoint(value.name) : at.line;
 }
