@@ -27,8 +27,8 @@ export function PointerReadout({ store }: { store: DeskStore }) {
         <span>{text.pixels(at[0], at[1])}</span>
       ) : (
         <>
-          <span>{text.offset(words)}</span>
-          <span>{text.elevation(words)}</span>
+          <span className="whitespace-nowrap">{text.offset(words)}</span>
+          <span className="whitespace-nowrap">{text.elevation(words)}</span>
         </>
       )}
     </output>

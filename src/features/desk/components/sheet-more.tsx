@@ -3,8 +3,15 @@ import { classNames } from '#client/components/class-names.ts';
 import { sheetAidsText as text } from '#client/text/tracing-aids.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 
+type SheetMoreProps = {
+  store: DeskStore;
+  /** What is seen of the sheet, which only some sheets let choose: a row of its own. */
+  views: ReactNode;
+  children: ReactNode;
+};
+
 /** The lesser buttons over the sheet: side by side where the sheet is wide, behind one button where they would cover it. */
-export function SheetMore({ store, children }: { store: DeskStore; children: ReactNode }) {
+export function SheetMore({ store, views, children }: SheetMoreProps) {
   const [open, setOpen] = useState(false);
   const id = useId();
   // A key opens one of the panels too, which has to be seen then.
@@ -32,6 +39,14 @@ export function SheetMore({ store, children }: { store: DeskStore; children: Rea
         )}
       >
         {children}
+      </div>
+      <div
+        className={classNames(
+          'order-last flex-wrap justify-end gap-2 basis-full empty:hidden @2xl:flex',
+          open ? 'flex' : 'hidden',
+        )}
+      >
+        {views}
       </div>
     </>
   );

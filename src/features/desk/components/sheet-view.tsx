@@ -146,9 +146,15 @@ export function SheetView({
           <PointerReadout store={store} />
         </div>
         <div className="pointer-events-none! ml-auto flex flex-wrap items-start justify-end gap-2 [&_[data-over-sheet]]:pointer-events-auto">
-          <SheetMore store={store}>
-            {pictureSwitch}
-            <SectionViewSwitch store={store} views={views} />
+          <SheetMore
+            store={store}
+            views={
+              <>
+                {pictureSwitch}
+                <SectionViewSwitch store={store} views={views} />
+              </>
+            }
+          >
             <GridSwitch store={store} />
             <SheetAids store={store} noteCount={notes.length} />
             {picture && (
