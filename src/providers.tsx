@@ -1,7 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { StrictMode, Suspense } from 'react';
-import type { createBrowserRouter } from 'react-router-dom';
-import { RouterProvider } from 'react-router-dom';
+import { type ReactNode, StrictMode, Suspense } from 'react';
 import { Loading } from './components/loading.tsx';
 import { NoticeProvider } from './components/notice.tsx';
 import { ApiProblem } from './lib/api-problem.ts';
@@ -26,17 +24,15 @@ export function createQueryClient(): QueryClient {
 
 interface ProvidersProps {
   queryClient: QueryClient;
-  router: ReturnType<typeof createBrowserRouter>;
+  children: ReactNode;
 }
 
-export function Providers({ queryClient, router }: ProvidersProps) {
+export function Providers({ queryClient, children }: ProvidersProps) {
   return (
     <StrictMode>
       <QueryClientProvider client={queryClient}>
         <NoticeProvider>
-          <Suspense fallback={<Loading />}>
-            <RouterProvider router={router} />
-          </Suspense>
+          <Suspense fallback={<Loading />}>{children}</Suspense>
         </NoticeProvider>
       </QueryClientProvider>
     </StrictMode>

@@ -1,6 +1,6 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useEffect } from 'react';
-import { useLocation, useNavigate, useRouteError } from 'react-router-dom';
+import { useLocation, useNavigate } from 'react-router-dom';
 import { Button, ButtonLink } from '#client/components/button.tsx';
 import { RequestNumber } from '#client/components/problem-note.tsx';
 import { PublicLayout } from '#client/layouts/public-layout.tsx';
@@ -11,8 +11,7 @@ import { problemText as text } from '#client/text/problems.ts';
 import { NotFoundPage } from './not-found-page.tsx';
 
 /** What a page shows in place of itself when it could not be loaded or failed: what happened, what to do, the request number. */
-export function RouteError() {
-  const error = useRouteError();
+export function RouteError({ error }: { error: unknown }) {
   const retry = useRetry();
   useEffect(() => onSignInMoment((moment) => moment === 'signedIn' && retry()), [retry]);
   if (isNotFound(error)) return <NotFoundPage />;
