@@ -12,26 +12,56 @@ import {
 import type { NetDetailDto, NetOp } from '#shared/contract/nets.ts';
 import { A1_PX } from './a1-sheet.ts';
 import type { ApiClient } from './api-client.ts';
+import { E_600 } from './line-work.ts';
 
-/** 60 lines in all: the two beds, the apron, 36 equipotentials and 21 flow lines. */
-const NET = flatApronNet({
-  width: 20,
-  headwater: 108,
-  tailwater: 100,
+/** A net under an apron, of which the lines are the two beds, the apron, the equipotentials and the flow lines. */
+export type BenchNet = {
+  readonly drops: number;
+  readonly channels: number;
+  readonly verticesPerLine: number;
+  readonly readings: number;
+  readonly pxPerM: number;
+  readonly middlePx: SheetPoint;
+};
+
+/** 60 lines of 100 points on an A1 sheet at 300 dpi. */
+export const A1_NET: BenchNet = {
   drops: 37,
   channels: 21,
-  middle: [0, 100],
-});
-const VERTICES = 100;
-const READINGS = 24;
-const PX_PER_M = 115;
+  verticesPerLine: 100,
+  readings: 24,
+  pxPerM: 115,
+  middlePx: [A1_PX.width / 2, 1500],
+};
+/** 200 lines and 5,000 points on an E-size sheet at 600 dpi. */
+export const E600_NET: BenchNet = {
+  drops: 121,
+  channels: 77,
+  verticesPerLine: 25,
+  readings: 30,
+  pxPerM: 320,
+  middlePx: [E_600.width / 2, 4000],
+};
 
-const toSheet = ([offset, elevation]: ExactPlace): SheetPoint => [
-  A1_PX.width / 2 + PX_PER_M * offset,
-  1500 - PX_PER_M * (elevation - 100),
+const exactNet = ({ drops, channels }: BenchNet) =>
+  flatApronNet({ width: 20, headwater: 108, tailwater: 100, drops, channels, middle: [0, 100] });
+
+/** Place on the sheet by drops lost and channels counted from the apron. */
+export function placeOnSheet(net: BenchNet, dropsLost: number, channel: number): SheetPoint {
+  return toSheet(net, exactNet(net).placeAt(dropsLost, channel));
+}
+
+/** The place of a vertex of an equipotential, by its number from upstream and from the apron. */
+export function vertexOnSheet(net: BenchNet, equipotential: number, vertex: number): SheetPoint {
+  return placeOnSheet(net, equipotential, (net.channels * vertex) / (net.verticesPerLine - 1));
+}
+
+const toSheet = ({ middlePx, pxPerM }: BenchNet, [offset, elevation]: ExactPlace): SheetPoint => [
+  middlePx[0] + pxPerM * offset,
+  middlePx[1] - pxPerM * (elevation - 100),
 ];
 
-function knownPoints(): Array<EntityOf<'knownPoint'>> {
+function knownPoints(net: BenchNet): Array<EntityOf<'knownPoint'>> {
   const places: ExactPlace[] = [
     [-30, 100],
     [30, 100],
@@ -40,41 +70,46 @@ function knownPoints(): Array<EntityOf<'knownPoint'>> {
   return places.map((place, index) => ({
     kind: 'knownPoint',
     name: `K${index + 1}`,
-    at: toSheet(place),
+    at: toSheet(net, place),
     offset: place[0],
     elevation: place[1],
     use: 'fit',
   }));
 }
 
-const lines = (): Array<EntityOf<'line'>> =>
-  NET.lines.map((line) => ({
+const lines = (net: BenchNet): Array<EntityOf<'line'>> =>
+  exactNet(net).lines.map((line) => ({
     kind: 'line',
     origin: 'traced',
     line: line.line,
     name: '',
-    points: Array.from({ length: VERTICES }, (_, index) => toSheet(line.at(index / (VERTICES - 1)))),
+    points: Array.from({ length: net.verticesPerLine }, (_, index) =>
+      toSheet(net, line.at(index / (net.verticesPerLine - 1))),
+    ),
     finished: true,
     water: line.water,
     head: null,
     drops: null,
   }));
 
-const readingPoints = (): Array<EntityOf<'readingPoint'>> =>
-  Array.from({ length: READINGS }, (_, index) => ({
+const readingPoints = (net: BenchNet): Array<EntityOf<'readingPoint'>> =>
+  Array.from({ length: net.readings }, (_, index) => ({
     kind: 'readingPoint',
     ...UNSAID.readingPoint,
     name: `P${index + 1}`,
-    place: { on: 'sheet', at: toSheet(NET.placeAt(1.5 + (index * 34) / READINGS, 2.5 + (index % 12))) },
+    place: {
+      on: 'sheet',
+      at: placeOnSheet(net, 1.5 + (index * (net.drops - 3)) / net.readings, 2.5 + (index % 12)),
+    },
     order: index,
   }));
 
-const singles = (): DocumentEntity[] => [
+const singles = ({ drops }: BenchNet): DocumentEntity[] => [
   {
     kind: 'waterLevels',
     ...UNSAID.waterLevels,
-    headwater: NET.headwater,
-    tailwater: NET.tailwater,
+    headwater: 108,
+    tailwater: 100,
     gammaW: 9.81,
     source: '',
   },
@@ -82,7 +117,7 @@ const singles = (): DocumentEntity[] => [
   {
     kind: 'netCount',
     countedIn: null,
-    drops: NET.drops,
+    drops,
     channels: null,
     cellRatio: 1,
     tracingAccuracyPx: 1.5,
@@ -90,10 +125,11 @@ const singles = (): DocumentEntity[] => [
   },
 ];
 
-/** A traced net of 60 lines on a sheet, made through the API as the desk makes it. */
+/** A traced net on a sheet, made through the API as the desk makes it. */
 export async function traceBenchNet(
   client: ApiClient,
   sheetId: string,
+  net: BenchNet = A1_NET,
 ): Promise<{ netId: string; sectionId: string }> {
   const [sectionId, netId] = [uuidv7(), uuidv7()];
   await client.post(`/sheets/${sheetId}/sections`, { id: sectionId, name: 'A', chainage: '', frame: null });
@@ -103,7 +139,7 @@ export async function traceBenchNet(
     const held = SINGLE_KINDS.includes(value.kind) ? singleOf(document, value.kind) : null;
     return { op: 'put', entityId: held?.id ?? uuidv7(), baseVersion: held?.version ?? 0, value };
   };
-  const ops = [...knownPoints(), ...lines(), ...readingPoints(), ...singles()].map(opOf);
+  const ops = [...knownPoints(net), ...lines(net), ...readingPoints(net), ...singles(net)].map(opOf);
   await client.post(`/nets/${netId}/commands`, { clientId: uuidv7(), seq: 1, label: 'traced', ops });
   return { netId, sectionId };
 }

@@ -11,38 +11,50 @@ export interface TraceEvent {
   args?: { name?: string };
 }
 
-/**
- * Milliseconds that the page's main thread worked for each frame it drew: the sum of its tasks from the beginning of
- * one main-thread frame to the beginning of the next, so that handling the pointer counts with the drawing.
- */
-export function mainThreadFrames(events: readonly TraceEvent[]): number[] {
+/** What the page's main thread did while something was going on. All in milliseconds. */
+export interface MainThread {
+  /** Work for each frame it drew: the sum of its tasks from the beginning of one to the beginning of the next. */
+  readonly work: number[];
+  /** From the beginning of one frame to the beginning of the next. */
+  readonly every: number[];
+  /** The longest task, the time counted that the thread was on a processor. */
+  readonly longestTask: number;
+}
+
+/** Of the page that drew most: a hidden one draws no frames. Handling the pointer counts with the drawing. */
+export function mainThreadOf(events: readonly TraceEvent[]): MainThread {
   const threads = new Set(
     events
       .filter((event) => event.name === 'thread_name' && event.args?.name === 'CrRendererMain')
       .map(threadOf),
   );
-  // A hidden page draws no frames; the one that is panned drew most.
-  const frames = [...threads].map((thread) =>
-    framesOfThread(events.filter((event) => threadOf(event) === thread)),
-  );
-  return frames.sort((a, b) => b.length - a.length)[0] ?? [];
+  const each = [...threads].map((thread) => ofThread(events.filter((event) => threadOf(event) === thread)));
+  return each.sort((a, b) => b.work.length - a.work.length)[0] ?? { work: [], every: [], longestTask: 0 };
 }
+
+/** Milliseconds that the page's main thread worked for each frame it drew. */
+export const mainThreadFrames = (events: readonly TraceEvent[]): number[] => mainThreadOf(events).work;
 
 const threadOf = (event: TraceEvent) => `${event.pid}/${event.tid}`;
 
-function framesOfThread(events: TraceEvent[]): number[] {
+function ofThread(events: TraceEvent[]): MainThread {
   const begins = events
     .filter((event) => event.ph === 'b' && event.name === 'AnimationFrame')
     .map((event) => event.ts)
     .sort((a, b) => a - b);
-  const tasks = events
-    .filter((event) => event.ph === 'X' && event.name === 'ThreadControllerImpl::RunTask')
-    .sort((a, b) => a.ts - b.ts);
-  return begins.slice(0, -1).map((begin, index) => {
+  const tasks = events.filter((event) => event.ph === 'X' && event.name === 'ThreadControllerImpl::RunTask');
+  const work = begins.slice(0, -1).map((begin, index) => {
     const end = begins[index + 1] ?? begin;
     const within = tasks.filter(
       (task) => task.ts + (task.dur ?? 0) > begin && task.ts + (task.dur ?? 0) <= end,
     );
-    return within.reduce((sum, task) => sum + (task.tdur ?? task.dur ?? 0), 0) / 1000;
+    return within.reduce((sum, task) => sum + busyMs(task), 0);
   });
+  return {
+    work,
+    every: begins.slice(1).map((begin, index) => (begin - begins[index]!) / 1000),
+    longestTask: tasks.reduce((longest, task) => Math.max(longest, busyMs(task)), 0),
+  };
 }
+
+const busyMs = (task: TraceEvent) => (task.tdur ?? task.dur ?? 0) / 1000;
