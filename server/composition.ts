@@ -7,6 +7,7 @@ import { systemClock } from './http/clock.ts';
 import { createRenderProcess } from './imaging/render-process.ts';
 import { createCalculationSheetHandler } from './jobs/handlers/make-calculation-sheet.ts';
 import { createRenditionHandler } from './jobs/handlers/make-rendition.ts';
+import { createRemindReviewersHandler } from './jobs/handlers/remind-reviewers.ts';
 import { createRenderDrawingHandler } from './jobs/handlers/render-drawing.ts';
 import { createSendMailHandler } from './jobs/handlers/send-mail.ts';
 import type { JobHandlers } from './jobs/jobs-port.ts';
@@ -19,6 +20,7 @@ import { requeueCalculationSheets } from './services/calculation-sheet-service.t
 import { requeueWaitingMails } from './services/mail-delivery.ts';
 import { requeueRenderJobs } from './services/render-job-service.ts';
 import { requeueRenditions } from './services/rendition-job-service.ts';
+import { requeueReminders } from './services/review-reminders.ts';
 import { readingDeps } from './services/service-deps.ts';
 import { createLocalDiskStorage } from './storage/local-disk-storage.ts';
 import { sweepLeftovers } from './storage/sweep-leftovers.ts';
@@ -53,6 +55,7 @@ export async function compose(config: AppConfig, logger: Logger): Promise<Produc
       await requeueWaitingMails(deps);
       await requeueCalculationSheets(readingDeps(deps));
       await requeueRenditions(readingDeps(deps));
+      await requeueReminders(deps);
     },
     async stop(graceMs) {
       await jobs.stop(graceMs);
@@ -80,6 +83,7 @@ function jobHandlers(deps: AppDeps, mailer: MailerPort): JobHandlers {
     'render-drawing': createRenderDrawingHandler(deps, () => createRenderProcess()),
     'make-calculation-sheet': createCalculationSheetHandler(deps),
     'make-rendition': createRenditionHandler(deps),
+    'remind-reviewers': createRemindReviewersHandler(deps),
     // Where mails are read on a page of ours their links have to stay.
     'send-mail': createSendMailHandler({ ...deps, mailer, forgetLinks: smtpUrl !== null || production }),
   };

@@ -45,6 +45,7 @@ function contentOfNet(): SheetContent {
       message: '',
       stayedOpen: [],
       decision: null,
+      records: [],
     },
     jobNumber: '1',
     dam: { name: 'Bench' },

@@ -4,7 +4,7 @@ import { migrations } from '#server/migrations/index.ts';
 import { CalculationSheetEntity } from './calculation-sheet-entity.ts';
 import { DamEntity, EventEntity, MembershipEntity } from './dam-entity.ts';
 import { DrawingEntity, RenderJobEntity, SheetEntity } from './drawing-entity.ts';
-import { ArtifactEntity, DecisionEntity, RevisionEntity } from './ledger-entity.ts';
+import { ArtifactEntity, DecisionEntity, ReviewReminderEntity, RevisionEntity } from './ledger-entity.ts';
 import { OutboxMailEntity } from './mail-entity.ts';
 import { SnakeNamingStrategy } from './naming-strategy.ts';
 import { CommandBatchEntity, DocumentEntityRow, NetEntity, SectionEntity } from './net-entity.ts';
@@ -42,6 +42,7 @@ export const entities = [
   NoteReadEntity,
   RevisionEntity,
   DecisionEntity,
+  ReviewReminderEntity,
   ArtifactEntity,
   CalculationSheetEntity,
   OutboxMailEntity,

@@ -14,6 +14,7 @@ export const QUEUES: Record<JobName, QueueRules> = {
   'send-mail': { concurrency: 2, expireInSeconds: 10 * 60 },
   'make-calculation-sheet': { concurrency: 1, expireInSeconds: 10 * 60 },
   'make-rendition': { concurrency: 1, expireInSeconds: 20 * 60 },
+  'remind-reviewers': { concurrency: 1, expireInSeconds: 10 * 60 },
 };
 export const JOB_NAMES = Object.keys(QUEUES) as JobName[];
 

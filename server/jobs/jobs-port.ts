@@ -10,6 +10,8 @@ export interface JobIds {
   'make-calculation-sheet': string;
   /** Row of `rendition`. */
   'make-rendition': string;
+  /** Row of `review_reminder`. */
+  'remind-reviewers': string;
 }
 export type JobName = keyof JobIds;
 /** Does the work of one row; idempotent, and stops soon after `signal` aborts. */

@@ -16,6 +16,7 @@ import { Renditions1796126400110 } from './1796126400110-renditions.ts';
 import { DocumentVersion31796126400111 } from './1796126400111-document-version-3.ts';
 import { NetPresence1796126400120 } from './1796126400120-net-presence.ts';
 import { NoteThreads1796126400130 } from './1796126400130-note-threads.ts';
+import { SignedDecisions1796126400140 } from './1796126400140-signed-decisions.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -37,4 +38,5 @@ export const migrations = [
   DocumentVersion31796126400111,
   NetPresence1796126400120,
   NoteThreads1796126400130,
+  SignedDecisions1796126400140,
 ];

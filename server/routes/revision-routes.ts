@@ -7,13 +7,16 @@ import { createSendingService } from '#server/services/sending-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
 import { id } from '#shared/contract/common.ts';
 import {
+  acceptanceWithdrawalInput,
   decisionInput,
   revisionDto,
   revisionListDto,
   revisionSummary,
   sendInput,
   sendingDto,
+  sendingWithdrawalInput,
 } from '#shared/contract/revisions.ts';
+import { signed } from './signed.ts';
 
 const netParams = z.object({ netId: id });
 const revisionParams = z.object({ revisionId: id });
@@ -63,9 +66,37 @@ export const revisionRoutes: RouteRecord[] = [
     body: decisionInput,
     reply: revisionDto,
     status: 201,
+    handle: async ({ deps, req, params, body, actor, scope }) =>
+      signed(deps, req, actor, body.password, async (tx) => {
+        await createRevisionService(tx).decide(params.revisionId, body, actor);
+        return revisionDetail(tx.manager, params.revisionId, actor, scope);
+      }),
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/revisions/:revisionId/acceptance-withdrawals',
+    access: { who: 'dam', action: 'revision.decide', target: 'revision' },
+    params: revisionParams,
+    body: acceptanceWithdrawalInput,
+    reply: revisionDto,
+    status: 201,
+    handle: async ({ deps, req, params, body, actor, scope }) =>
+      signed(deps, req, actor, body.password, async (tx) => {
+        await createRevisionService(tx).withdrawAcceptance(params.revisionId, body, actor);
+        return revisionDetail(tx.manager, params.revisionId, actor, scope);
+      }),
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/revisions/:revisionId/sending-withdrawals',
+    access: { who: 'dam', action: 'net.send', target: 'revision' },
+    params: revisionParams,
+    body: sendingWithdrawalInput,
+    reply: revisionDto,
+    status: 201,
     handle: async ({ deps, params, body, actor, scope }) =>
       inTransaction(deps, async (tx) => {
-        await createRevisionService(tx).decide(params.revisionId, body, actor);
+        await createRevisionService(tx).withdrawSending(params.revisionId, body, actor);
         return revisionDetail(tx.manager, params.revisionId, actor, scope);
       }),
   }),

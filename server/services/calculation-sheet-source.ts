@@ -37,12 +37,12 @@ async function revisionMaterial(
   jobNumber: string,
 ): Promise<SheetMaterial> {
   const { row, payload } = await openRevision(manager, revisionId);
-  const { decision } = await revisionSummaryOf(manager, revisionId);
+  const summary = await revisionSummaryOf(manager, revisionId);
   const notes = await notesOfNet(manager, row.netId);
   return {
     sheet: await manager.findOneByOrFail(SheetEntity, { id: payload.sheet.id }),
-    madeAt: new Date(decision?.decidedAt ?? payload.sentAt),
-    source: revisionSource({ payload, hash: row.payloadHash, decision, notes, jobNumber }),
+    madeAt: new Date(summary.decision?.decidedAt ?? payload.sentAt),
+    source: revisionSource({ payload, hash: row.payloadHash, summary, notes, jobNumber }),
   };
 }
 

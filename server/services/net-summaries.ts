@@ -1,6 +1,7 @@
 import type { EntityManager } from 'typeorm';
 import { notFound } from '#server/errors/app-error.ts';
 import type { NetSummary } from '#shared/contract/drawings.ts';
+import type { RevisionState } from '#shared/contract/revisions.ts';
 import type { UnitSystem } from '#shared/contract/unit-system.ts';
 import { canBeRead } from './schedule-queries.ts';
 
@@ -17,7 +18,7 @@ interface SummaryRow {
   label: string | null;
   reviewer_id: string | null;
   reviewer_name: string | null;
-  decision: 'accepted' | 'returned' | null;
+  revision_state: RevisionState | null;
   changed_since: boolean | null;
 }
 
@@ -28,7 +29,7 @@ const SUMMARIES = `
       WHERE e.owner_id = n.id AND e.kind = 'netCount' AND NOT e.removed) AS drops,
     (SELECT count(*)::int FROM note o WHERE o.net_id = n.id AND o.state <> 'closed') AS open_notes,
     r.label, r.reviewer_id, p.name AS reviewer_name, n.change_number > r.change_number AS changed_since,
-    (SELECT d.decision FROM decision d WHERE d.revision_id = r.id ORDER BY d.decided_at LIMIT 1) AS decision
+    revision_state(r.id) AS revision_state
   FROM net n
   JOIN section c ON c.id = n.section_id
   JOIN sheet s ON s.id = c.sheet_id
@@ -38,6 +39,16 @@ const SUMMARIES = `
     WHERE v.net_id = n.id ORDER BY v.number DESC LIMIT 1) r ON true
   LEFT JOIN person p ON p.id = r.reviewer_id`;
 
+/** Where its newest revision leaves a net: after an acceptance was withdrawn it is to be sent again, as a returned one. */
+const STATE_OF: Record<RevisionState, NetSummary['state']> = {
+  waiting: 'sent',
+  accepted: 'accepted',
+  acceptedWithNotes: 'accepted',
+  returned: 'returned',
+  acceptanceWithdrawn: 'returned',
+  withdrawn: 'draft',
+};
+
 async function toSummary(manager: EntityManager, row: SummaryRow): Promise<NetSummary> {
   const { reviewer_id: id, reviewer_name: name } = row;
   return {
@@ -45,7 +56,7 @@ async function toSummary(manager: EntityManager, row: SummaryRow): Promise<NetSu
     name: row.name,
     drops: await countOf(manager, row),
     openNotes: row.open_notes,
-    state: row.label === null ? 'draft' : (row.decision ?? 'sent'),
+    state: row.revision_state === null ? 'draft' : STATE_OF[row.revision_state],
     revisionLabel: row.label,
     changedSinceRevision: row.changed_since ?? false,
     reviewer: id && name !== null ? { id, name } : null,

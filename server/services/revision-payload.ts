@@ -33,12 +33,18 @@ export function openPayload(row: RevisionEntity, previousHash: string | null): R
 /** A payload in the present version's terms; what is no payload is left for the schema to refuse. */
 function completedPayload(json: unknown): unknown {
   if (typeof json !== 'object' || json === null) return json;
-  const { document, reading } = json as Record<string, unknown>;
-  return { ...ADDED, ...json, document: upgradeDocument(document), reading: completeReading(reading) };
+  const { document, reading, reviewer } = json as Record<string, unknown>;
+  return {
+    ...ADDED,
+    reviewers: [reviewer],
+    ...json,
+    document: upgradeDocument(document),
+    reading: completeReading(reading),
+  };
 }
 
 /** What payloads of earlier versions do not hold: it was not asked for then. */
-const ADDED = { stayedOpen: null } satisfies Partial<RevisionPayload>;
+const ADDED = { stayedOpen: null, dueOn: null } satisfies Partial<RevisionPayload>;
 
 function faultOfRow(
   row: RevisionEntity,
@@ -51,6 +57,8 @@ function faultOfRow(
     ['label', row.label, payload.label],
     ['sender', row.sentBy, payload.sentBy.id],
     ['reviewer', row.reviewerId, payload.reviewer.id],
+    ['reviewers', row.reviewerIds.join(), payload.reviewers.map((person) => person.id).join()],
+    ['day it is due', row.dueOn, payload.dueOn],
     ['time of sending', row.sentAt.toISOString(), payload.sentAt],
     ['engine version', row.engineVersion, payload.engineVersion],
     ['drawers', row.drawnBy.join(), payload.drawnBy.map((person) => person.id).join()],

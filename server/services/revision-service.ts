@@ -1,110 +1,126 @@
-import { In } from 'typeorm';
 import { v7 as uuidv7 } from 'uuid';
 import type * as z from 'zod/mini';
-import { MembershipEntity } from '#server/entities/dam-entity.ts';
 import { DecisionEntity, RevisionEntity } from '#server/entities/ledger-entity.ts';
-import { PersonEntity } from '#server/entities/person-entity.ts';
 import { AppError, invalidInput, notFound } from '#server/errors/app-error.ts';
 import type { Actor } from '#server/http/route-record.ts';
-import { decidedMail } from '#server/mail/templates/checking-mails.ts';
-import type { DecisionRefusal } from '#server/policies/revision-policy.ts';
-import type { decisionInput, RevisionPayload } from '#shared/contract/revisions.ts';
-import { sectionTitle } from '#shared/text/section-title.ts';
-import { revisionFacts } from './checking-letters.ts';
-import { writeEvent } from './event-writer.ts';
-import { queueMail } from './mail-service.ts';
+import {
+  acceptanceWithdrawalRefusal,
+  type DecisionRefusal,
+  decisionRefusal,
+  sendingWithdrawalRefusal,
+} from '#server/policies/revision-policy.ts';
+import type {
+  acceptanceWithdrawalInput,
+  DecisionKind,
+  decisionInput,
+  sendingWithdrawalInput,
+} from '#shared/contract/revisions.ts';
 import { refuseUnanswered } from './must-answer.ts';
 import { lockNet } from './net-locks.ts';
 import { placeOfNet, refusePutAway } from './net-place.ts';
-import { personState } from './person-state.ts';
-import { decisionRefusalFor, openRevision } from './revision-queries.ts';
+import { announceDecision, mailDecision, mailSendingWithdrawn } from './revision-announcements.ts';
+import { decisionFacts, openRevision } from './revision-queries.ts';
 import type { ServiceDeps } from './service-deps.ts';
 
 type DecisionInput = z.output<typeof decisionInput>;
+type AcceptanceWithdrawal = z.output<typeof acceptanceWithdrawalInput>;
+type SendingWithdrawal = z.output<typeof sendingWithdrawalInput>;
 export type RevisionServiceDeps = Pick<ServiceDeps, 'manager' | 'clock' | 'live' | 'jobs' | 'config'>;
 
-/** The reviewer's decision on a revision. Runs in a transaction of the caller under the net's lock. */
+/**
+ * What becomes of a revision: the reviewers' decisions, and the records by which an acceptance or a sending is withdrawn.
+ * Nothing is ever changed or erased. Whoever signs has proved who they are before. Runs in a transaction of the caller,
+ * under the net's lock.
+ */
 export function createRevisionService(deps: RevisionServiceDeps) {
-  const { manager, clock, live, config } = deps;
+  const { manager, clock } = deps;
 
   async function decide(revisionId: string, input: DecisionInput, actor: Actor): Promise<void> {
-    await lockNetOf(revisionId);
-    // Nobody accepts a damaged record: opening it holds it against its hash first.
-    const { row, payload } = await openRevision(manager, revisionId);
-    const refusal = await decisionRefusalFor(manager, row, actor.id);
-    if (refusal) throw refused(refusal);
+    const { row, payload, facts } = await opened(revisionId, actor);
+    refuseFor(decisionRefusal(facts));
     refusePutAway(await placeOfNet(manager, row.netId));
-    if (input.decision !== 'returned') await refuseUnanswered(manager, row.netId);
-    if (input.decision === 'returned' && input.note === '')
-      throw invalidInput([
-        { path: 'note', message: 'Say what has to be changed; a revision is returned with a note.' },
-      ]);
-    await manager.insert(DecisionEntity, {
-      id: uuidv7(),
-      revisionId,
-      decision: input.decision,
-      decidedBy: actor.id,
-      note: input.note,
-      decidedAt: clock.now(),
-    });
-    await mailDecision(payload, input, actor);
-    await announce(payload, input, actor);
+    const { decision, note, capacity } = input;
+    if (decision !== 'accepted' && note === '') throw noteNeeded(decision);
+    if (decision !== 'returned') await refuseUnanswered(manager, row.netId);
+    await insertRecord(row, actor, { decision, note, signedName: actor.name, capacity });
+    const told = { decision, note, capacity };
+    await mailDecision(deps, payload, told, actor);
+    await announceDecision(deps, payload, decision, actor);
   }
 
-  async function lockNetOf(revisionId: string): Promise<void> {
-    const row = await manager.findOne(RevisionEntity, {
+  /** Corrects a wrong acceptance by a record that says so and why; the acceptance stays to be read. */
+  async function withdrawAcceptance(
+    revisionId: string,
+    { reason, capacity }: AcceptanceWithdrawal,
+    actor: Actor,
+  ): Promise<void> {
+    const { row, payload, facts } = await opened(revisionId, actor);
+    refuseFor(acceptanceWithdrawalRefusal(facts));
+    const decision = 'acceptanceWithdrawn';
+    await insertRecord(row, actor, { decision, note: reason, signedName: actor.name, capacity });
+    await mailDecision(deps, payload, { decision, note: reason, capacity }, actor);
+    await announceDecision(deps, payload, decision, actor);
+  }
+
+  /** Takes a revision back from checking before it is decided; its letter stays used. */
+  async function withdrawSending(
+    revisionId: string,
+    { reason }: SendingWithdrawal,
+    actor: Actor,
+  ): Promise<void> {
+    const { row, payload, facts } = await opened(revisionId, actor);
+    refuseFor(sendingWithdrawalRefusal(facts.state));
+    refusePutAway(await placeOfNet(manager, row.netId));
+    const decision = 'sendingWithdrawn';
+    await insertRecord(row, actor, { decision, note: reason, signedName: '', capacity: '' });
+    await mailSendingWithdrawn(deps, payload, reason, actor);
+    await announceDecision(deps, payload, decision, actor);
+  }
+
+  /** Nobody signs a damaged record: opening it holds it against its hash first. */
+  async function opened(revisionId: string, actor: Actor) {
+    const held = await manager.findOne(RevisionEntity, {
       select: { id: true, netId: true },
       where: { id: revisionId },
     });
-    if (!row) throw notFound();
-    await lockNet(manager, row.netId);
+    if (!held) throw notFound();
+    await lockNet(manager, held.netId);
+    const { row, payload } = await openRevision(manager, revisionId);
+    return { row, payload, facts: await decisionFacts(manager, row, actor.id) };
   }
 
-  async function mailDecision(payload: RevisionPayload, input: DecisionInput, actor: Actor): Promise<void> {
-    const letter = decidedMail({
-      ...revisionFacts(payload),
-      ...input,
-      decidedBy: actor.name,
-      url: `${config.publicUrl}/revisions/${payload.revisionId}`,
-    });
-    for (const person of await concerned(payload, actor))
-      await queueMail(deps, { ...letter, personId: person.id, to: person.email });
-  }
-
-  /** The sender and those who drew, as far as they still belong to the dam and can sign in. */
-  async function concerned(payload: RevisionPayload, actor: Actor): Promise<PersonEntity[]> {
-    const ids = new Set([payload.sentBy.id, ...payload.drawnBy.map((person) => person.id)]);
-    ids.delete(actor.id);
-    const members = await manager.findBy(MembershipEntity, {
-      damId: payload.dam.id,
-      personId: In([...ids]),
-    });
-    const people = await manager.findBy(PersonEntity, { id: In(members.map((each) => each.personId)) });
-    return people.filter((person) => personState(person) === 'active');
-  }
-
-  async function announce(
-    payload: RevisionPayload,
-    { decision }: DecisionInput,
+  async function insertRecord(
+    { id: revisionId }: RevisionEntity,
     actor: Actor,
+    record: Pick<DecisionEntity, 'decision' | 'note' | 'signedName' | 'capacity'>,
   ): Promise<void> {
-    const { netId, dam, drawing, section, netName, label, revisionId } = payload;
-    await writeEvent(manager, {
-      damId: dam.id,
-      drawingId: drawing.id,
-      netId,
-      personId: actor.id,
-      type: `revision.${decision}`,
-      text: `${decision} revision ${label} of ${sectionTitle(section.name)}, ${netName}`,
-      detail: { revisionId },
+    await manager.insert(DecisionEntity, {
+      id: uuidv7(),
+      revisionId,
+      decidedBy: actor.id,
+      decidedAt: clock.now(),
+      ...record,
     });
-    await live.publish(manager, { type: 'revisions', damId: dam.id, netId });
   }
 
-  return { decide };
+  return { decide, withdrawAcceptance, withdrawSending };
 }
 
 const STATUS_OF: Partial<Record<DecisionRefusal['code'], number>> = { 'own-work': 403, forbidden: 403 };
 
-const refused = ({ code, text }: DecisionRefusal) =>
-  new AppError(code, STATUS_OF[code] ?? 409, 'You cannot decide on this revision', text);
+function refuseFor(refusal: DecisionRefusal | null): void {
+  if (refusal === null) return;
+  const { code, text } = refusal;
+  throw new AppError(code, STATUS_OF[code] ?? 409, 'You cannot decide on this revision', text);
+}
+
+const noteNeeded = (decision: DecisionKind) =>
+  invalidInput([
+    {
+      path: 'note',
+      message:
+        decision === 'returned'
+          ? 'Say what has to be changed; a revision is returned with a note.'
+          : 'Write the notes with which it is accepted.',
+    },
+  ]);

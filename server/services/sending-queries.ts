@@ -1,5 +1,5 @@
 import { type EntityManager, Not } from 'typeorm';
-import { DecisionEntity, RevisionEntity } from '#server/entities/ledger-entity.ts';
+import { RevisionEntity } from '#server/entities/ledger-entity.ts';
 import { NoteEntity } from '#server/entities/note-entity.ts';
 import { type AppError, conflict, unprocessable } from '#server/errors/app-error.ts';
 import { beforeSending } from '#shared/compute/before-sending.ts';
@@ -8,10 +8,12 @@ import type { PersonRef } from '#shared/contract/common.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { SendingDto } from '#shared/contract/revisions.ts';
+import { namesText } from '#shared/text/names-text.ts';
 import { readDocument } from './net-document.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { type NetPlace, placeOfNet, putAwayRefusal } from './net-place.ts';
 import { revisionLabel } from './revision-label.ts';
+import { revisionStateOf } from './revision-queries.ts';
 import { readingOf } from './schedule-queries.ts';
 
 export interface Reviewer extends PersonRef {
@@ -49,13 +51,14 @@ export async function sendingRefusal(
   if (away) return away;
   if (reading.state === 'unfinished') return unfinished(reading);
   if (!newest || newest.changeNumber !== place.net.changeNumber) return null;
-  if (await manager.existsBy(DecisionEntity, { revisionId: newest.id })) return null;
-  const reviewer = reviewers.find((each) => each.id === newest.reviewerId);
-  if (!reviewer) return null;
+  if ((await revisionStateOf(manager, newest.id)) !== 'waiting') return null;
+  const ready = reviewers.filter((each) => newest.reviewerIds.includes(each.id));
+  // With one reviewer gone it can never be accepted, so it may go to others.
+  if (ready.length < newest.reviewerIds.length) return null;
   return conflict(
     'conflict',
     'This has been sent already',
-    `The net as it stands has been sent to ${reviewer.name} as revision ${newest.label}. Wait for the decision, or change the net and send it again.`,
+    `The net as it stands has been sent to ${namesText(ready)} as revision ${newest.label}. Wait for the decision, withdraw that revision, or change the net and send it again.`,
   );
 }
 

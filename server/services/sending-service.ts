@@ -7,6 +7,7 @@ import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
 import type { OpenItem, StayedOpen } from '#shared/contract/before-sending.ts';
 import type { PersonRef } from '#shared/contract/common.ts';
 import type { RevisionPayload, RevisionSummary, sendInput } from '#shared/contract/revisions.ts';
+import { namesText } from '#shared/text/names-text.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
 import { revisionFacts, scheduleFigures } from './checking-letters.ts';
 import { writeEvent } from './event-writer.ts';
@@ -17,6 +18,7 @@ import { lockNet } from './net-locks.ts';
 import { type NetPlace, placeOfNet } from './net-place.ts';
 import { refuseTakenId } from './new-id.ts';
 import { readInThread } from './reading-threads.ts';
+import { DAY_MS, planReminders } from './review-reminders.ts';
 import { revisionLabel } from './revision-label.ts';
 import { freezePayload } from './revision-payload.ts';
 import { revisionSummaryOf } from './revision-queries.ts';
@@ -47,9 +49,10 @@ export function createSendingService(deps: SendingDeps) {
     if (changeNumber !== input.changeNumber) throw changedMeanwhile(changeNumber);
     const place = await placeOfNet(manager, netId);
     const previous = await newestRevision(manager, netId);
-    const { payload, reviewer } = await draw(place, previous, input, actor);
+    const { payload, reviewers } = await draw(place, previous, input, actor);
     const hash = await insertRevision(payload, numberAfter(previous), changeNumber);
-    await tell(payload, hash, place, reviewer, actor);
+    await planReminders(deps, { revisionId: input.id, dueOn: input.dueOn });
+    await tell(payload, hash, place, reviewers, actor);
     return revisionSummaryOf(manager, input.id);
   }
 
@@ -57,11 +60,14 @@ export function createSendingService(deps: SendingDeps) {
   async function draw(place: NetPlace, previous: RevisionEntity | null, input: SendInput, actor: Actor) {
     const document = await readDocument(manager, place);
     const reading = await readInThread(document);
-    const reviewers = await reviewersOfDam(manager, place.dam.id);
-    const refusal = await sendingRefusal(manager, place, reading, previous, reviewers);
+    const onDam = await reviewersOfDam(manager, place.dam.id);
+    const refusal = await sendingRefusal(manager, place, reading, previous, onDam);
     if (refusal) throw refusal;
     const drawnBy = await drawersOfNet(manager, place.net.id);
-    const reviewer = chooseReviewer(reviewers, input.reviewerId, drawnBy, actor);
+    const reviewers = input.reviewerIds.map((id) => chooseReviewer(onDam, id, drawnBy, actor));
+    const [first] = reviewers;
+    if (!first || new Set(input.reviewerIds).size < reviewers.length) throw reviewersNamedTwice();
+    refuseDayGone(input.dueOn, clock.now());
     const payload: RevisionPayload = {
       ...placeFacts(place),
       payloadVersion: 1,
@@ -72,13 +78,15 @@ export function createSendingService(deps: SendingDeps) {
       engineVersion: ENGINE_VERSION,
       drawnBy,
       sentBy: { id: actor.id, name: actor.name },
-      reviewer: { id: reviewer.id, name: reviewer.name },
+      reviewer: { id: first.id, name: first.name },
+      reviewers: reviewers.map(({ id, name }) => ({ id, name })),
+      dueOn: input.dueOn,
       sentAt: clock.now().toISOString(),
       message: wellFormed(input.message),
       stayedOpen: withReasons(await openItemsOf(manager, place.net.id, document, reading), input.reasons),
       previousHash: previous?.payloadHash ?? null,
     };
-    return { payload, reviewer };
+    return { payload, reviewers };
   }
 
   async function insertRevision(payload: RevisionPayload, number: number, changeNumber: number) {
@@ -96,6 +104,8 @@ export function createSendingService(deps: SendingDeps) {
       drawnBy: payload.drawnBy.map((person) => person.id),
       sentBy: payload.sentBy.id,
       reviewerId: payload.reviewer.id,
+      reviewerIds: payload.reviewers.map((person) => person.id),
+      dueOn: payload.dueOn,
       message: payload.message,
       sentAt: new Date(payload.sentAt),
     });
@@ -106,7 +116,7 @@ export function createSendingService(deps: SendingDeps) {
     payload: RevisionPayload,
     hash: string,
     place: NetPlace,
-    reviewer: Reviewer,
+    reviewers: readonly Reviewer[],
     actor: Actor,
   ) {
     const { revisionId, netId, label, message } = payload;
@@ -114,11 +124,12 @@ export function createSendingService(deps: SendingDeps) {
       ...revisionFacts(payload),
       sentBy: actor.name,
       message,
+      dueOn: payload.dueOn,
       figures: scheduleFigures(payload),
       hash,
       url: `${config.publicUrl}/revisions/${revisionId}`,
     });
-    await queueMail(deps, { ...letter, personId: reviewer.id, to: reviewer.email });
+    for (const { id, email } of reviewers) await queueMail(deps, { ...letter, personId: id, to: email });
     const damId = place.dam.id;
     await writeEvent(manager, {
       damId,
@@ -126,7 +137,7 @@ export function createSendingService(deps: SendingDeps) {
       netId,
       personId: actor.id,
       type: 'revision.sent',
-      text: `sent revision ${label} of ${sectionTitle(place.section.name)}, ${place.net.name}, to ${reviewer.name} for checking`,
+      text: `sent revision ${label} of ${sectionTitle(place.section.name)}, ${place.net.name}, to ${namesText(reviewers)} for checking`,
       detail: { revisionId },
     });
     await live.publish(manager, { type: 'revisions', damId, netId });
@@ -158,7 +169,7 @@ function chooseReviewer(
   const reviewer = reviewers.find(({ id }) => id === reviewerId);
   if (!reviewer)
     throw invalidInput([
-      { path: 'reviewerId', message: 'This person is no reviewer of the dam, or can no longer sign in.' },
+      { path: 'reviewerIds', message: 'This person is no reviewer of the dam, or can no longer sign in.' },
     ]);
   if (reviewer.id !== actor.id && drawnBy.every(({ id }) => id !== reviewer.id)) return reviewer;
   throw new AppError(
@@ -181,6 +192,15 @@ function withReasons(items: readonly OpenItem[], reasons: SendInput['reasons']):
       })),
     );
   return items.map((each) => ({ ...each, reason: wellFormed(given.get(each.key) ?? '') }));
+}
+
+const reviewersNamedTwice = () =>
+  invalidInput([{ path: 'reviewerIds', message: 'Name at least one reviewer, and each of them once.' }]);
+
+/** The day may be over where the server is and not yet elsewhere: one day of grace covers every time zone. */
+function refuseDayGone(dueOn: string | null, now: Date): void {
+  if (dueOn === null || Date.parse(dueOn) > now.getTime() - 2 * DAY_MS) return;
+  throw invalidInput([{ path: 'dueOn', message: 'This day has passed. Choose a later one, or none.' }]);
 }
 
 const changedMeanwhile = (changeNumber: number) =>

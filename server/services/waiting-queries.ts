@@ -67,33 +67,37 @@ function itemOf(
 }
 
 async function toCheck(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
-  const rows: RevisionRow[] = await manager.query(
-    `SELECT ${NET_COLUMNS}, r.id AS revision_id, r.label, r.sent_at AS at, p.name AS person_name
+  const rows: Array<RevisionRow & { due_on: string | null }> = await manager.query(
+    `SELECT ${NET_COLUMNS}, r.id AS revision_id, r.label, r.sent_at AS at, r.due_on::text, p.name AS person_name
       ${NETS} JOIN person p ON p.id = r.sent_by
-      WHERE m.person_id = $1 AND 'reviewer' = ANY (m.roles) AND r.reviewer_id = $1
-        AND NOT EXISTS (SELECT 1 FROM decision e WHERE e.revision_id = r.id)`,
+      WHERE m.person_id = $1 AND 'reviewer' = ANY (m.roles) AND $1 = ANY (r.reviewer_ids)
+        AND revision_state(r.id) = 'waiting'
+        AND NOT EXISTS (SELECT 1 FROM decision e WHERE e.revision_id = r.id AND e.decided_by = $1)`,
     [personId],
   );
   return rows.map((row) =>
     itemOf('check', row, {
       text: `Check revision ${row.label} of ${titleOf(row)}`,
-      detail: `sent by ${row.person_name}`,
+      detail: `sent by ${row.person_name}${row.due_on ? `, due ${row.due_on}` : ''}`,
       revisionId: row.revision_id,
     }),
   );
 }
 
 async function toRevise(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
-  const rows: RevisionRow[] = await manager.query(
-    `SELECT ${NET_COLUMNS}, r.id AS revision_id, r.label, e.decided_at AS at, p.name AS person_name
-      ${NETS} JOIN decision e ON e.revision_id = r.id AND e.decision = 'returned' JOIN person p ON p.id = e.decided_by
+  const rows: Array<RevisionRow & { decision: string }> = await manager.query(
+    `SELECT ${NET_COLUMNS}, r.id AS revision_id, r.label, e.decided_at AS at, e.decision, p.name AS person_name
+      ${NETS} JOIN decision e ON e.revision_id = r.id AND e.decision IN ('returned', 'acceptanceWithdrawn') JOIN person p ON p.id = e.decided_by
       WHERE m.person_id = $1 AND 'engineer' = ANY (m.roles) AND r.sent_by = $1`,
     [personId],
   );
   return rows.map((row) =>
     itemOf('returned', row, {
       text: `Revise ${titleOf(row)}`,
-      detail: `revision ${row.label} was returned by ${row.person_name}`,
+      detail:
+        row.decision === 'returned'
+          ? `revision ${row.label} was returned by ${row.person_name}`
+          : `the acceptance of revision ${row.label} was withdrawn by ${row.person_name}`,
       revisionId: row.revision_id,
     }),
   );

@@ -4,7 +4,7 @@ import { openItem, openReason, stayedOpen } from './before-sending.ts';
 import { id, personRef, timestamp } from './common.ts';
 import { flowNetDocument } from './document.ts';
 import { sheetDto } from './drawings.ts';
-import { MAX_NOTE_LENGTH, MAX_OPEN_REASONS } from './limits.ts';
+import { MAX_NOTE_LENGTH, MAX_OPEN_REASONS, MAX_PASSWORD_LENGTH } from './limits.ts';
 import { noteDto } from './notes.ts';
 import { finding, netReading } from './reading.ts';
 
@@ -21,9 +21,14 @@ export const sendingDto = z.object({
 });
 export type SendingDto = z.infer<typeof sendingDto>;
 
+export const MAX_REVIEWERS = 10;
+
 export const sendInput = z.object({
   id,
-  reviewerId: id,
+  /** One or several; the revision is accepted when each of them has accepted, and returned when one returns it. */
+  reviewerIds: z.array(id).check(z.minLength(1), z.maxLength(MAX_REVIEWERS)),
+  /** The day by which the check is wanted, YYYY-MM-DD. */
+  dueOn: z._default(z.nullable(z.iso.date()), null),
   message: z.string().check(z.trim(), z.maxLength(MAX_NOTE_LENGTH)),
   /** A reason for each item that is still open; one that is open without a reason is asked for. */
   reasons: z._default(z.array(openReason).check(z.maxLength(MAX_OPEN_REASONS)), []),
@@ -47,8 +52,11 @@ export const revisionPayload = z.object({
   engineVersion: z.string(),
   drawnBy: z.array(personRef),
   sentBy: personRef,
-  /** Whom it was sent to for checking. */
+  /** Whom it was sent to for checking, the first of them also by itself. */
   reviewer: personRef,
+  reviewers: z.array(personRef),
+  /** The day by which the check was wanted; null where none was named. */
+  dueOn: z.nullable(z.string()),
   sentAt: timestamp,
   message: z.string(),
   /** What was open when it was sent, with the engineer's reasons; null where nobody was asked, before that was kept. */
@@ -58,12 +66,37 @@ export const revisionPayload = z.object({
 });
 export type RevisionPayload = z.infer<typeof revisionPayload>;
 
+/** A reviewer's decision, or that an acceptance or the sending itself was withdrawn. */
+export const decisionKind = z.enum([
+  'accepted',
+  'acceptedWithNotes',
+  'returned',
+  'acceptanceWithdrawn',
+  'sendingWithdrawn',
+]);
+export type DecisionKind = z.infer<typeof decisionKind>;
+
+/** What the records of a revision come to. */
+export const revisionState = z.enum([
+  'waiting',
+  'accepted',
+  'acceptedWithNotes',
+  'returned',
+  'acceptanceWithdrawn',
+  'withdrawn',
+]);
+export type RevisionState = z.infer<typeof revisionState>;
+
 export const decisionDto = z.object({
-  decision: z.enum(['accepted', 'returned']),
+  decision: decisionKind,
   decidedBy: personRef,
+  /** As signed; empty where it was not signed. */
+  signedName: z.string(),
+  capacity: z.string(),
   note: z.string(),
   decidedAt: timestamp,
 });
+export type DecisionDto = z.infer<typeof decisionDto>;
 
 export const revisionSummary = z.object({
   id,
@@ -71,7 +104,15 @@ export const revisionSummary = z.object({
   sentBy: personRef,
   sentAt: timestamp,
   reviewer: personRef,
+  reviewers: z.array(personRef),
+  dueOn: z.nullable(z.string()),
+  state: revisionState,
+  /** The record that settled the state; null while it waits. */
   decision: z.nullable(decisionDto),
+  /** All records, oldest first. */
+  decisions: z.array(decisionDto),
+  /** Label of the accepted revision that took the place of this accepted one; null for one that is not superseded. */
+  supersededBy: z.nullable(z.string()),
   hash: z.string(),
 });
 export type RevisionSummary = z.infer<typeof revisionSummary>;
@@ -85,10 +126,25 @@ export const revisionDto = z.object({
   can: z.array(damAction),
   /** Null when the reader may decide; otherwise the sentence that says why not. */
   decideRefusal: z.nullable(z.string()),
+  /** Whether the reader may withdraw the acceptance, or the sending. */
+  canWithdrawAcceptance: z.boolean(),
+  canWithdrawSending: z.boolean(),
 });
 export type RevisionDto = z.infer<typeof revisionDto>;
 
+const signature = {
+  /** The signer's password, entered again; it is checked and not kept. */
+  password: z.string().check(z.maxLength(MAX_PASSWORD_LENGTH)),
+  /** In what capacity the signer signs: "Senior dam engineer, CEng". */
+  capacity: z.string().check(z.trim(), z.minLength(1), z.maxLength(200)),
+};
+
 export const decisionInput = z.object({
-  decision: z.enum(['accepted', 'returned']),
+  decision: z.enum(['accepted', 'acceptedWithNotes', 'returned']),
   note: z.string().check(z.trim(), z.maxLength(MAX_NOTE_LENGTH)),
+  ...signature,
 });
+
+const withdrawalReason = z.string().check(z.trim(), z.minLength(1), z.maxLength(MAX_NOTE_LENGTH));
+export const acceptanceWithdrawalInput = z.object({ reason: withdrawalReason, ...signature });
+export const sendingWithdrawalInput = z.object({ reason: withdrawalReason });

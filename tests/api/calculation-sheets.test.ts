@@ -13,7 +13,7 @@ import type { CalculationSheetDto } from '#shared/contract/calculation-sheets.ts
 import type { RevisionDto } from '#shared/contract/revisions.ts';
 import { plusMinusText } from '#shared/text/number-text.ts';
 import { addFinishedNet } from '#tests/support/net-fixture.ts';
-import { beginLine, sentRevision } from '#tests/support/revision-fixture.ts';
+import { beginLine, SIGNATURE, sentRevision } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 
 let app: TestApp;
@@ -141,7 +141,11 @@ describe('the calculation sheet of a revision', () => {
     const note = { id: uuidv7(), anchor: { on: 'place', at: [10, 10] }, text: 'Before the decision.' };
     await place.caller.post(`/nets/${place.netId}/notes`, note).expect(201);
     await place.reviewer.caller
-      .post(`/revisions/${place.revisionId}/decision`, { decision: 'accepted', note: 'Well drawn.' })
+      .post(`/revisions/${place.revisionId}/decision`, {
+        decision: 'accepted',
+        note: 'Well drawn.',
+        ...SIGNATURE,
+      })
       .expect(201);
     const decided = await ask(place, place.revisionId);
     await run(decided);

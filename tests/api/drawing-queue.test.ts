@@ -25,6 +25,7 @@ const start = async () => {
     'send-mail': async () => undefined,
     'make-calculation-sheet': async () => undefined,
     'make-rendition': async () => undefined,
+    'remind-reviewers': async () => undefined,
   });
 };
 

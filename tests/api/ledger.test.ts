@@ -4,7 +4,7 @@ import { pino } from 'pino';
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { addFinishedNet, batchesOf, lineOf, openNet, put, putSingle } from '#tests/support/net-fixture.ts';
-import { reasonsFor } from '#tests/support/revision-fixture.ts';
+import { reasonsFor, SIGNATURE } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { withDataSource } from '#tests/support/test-database.ts';
 import { addMember } from '#tests/support/test-people.ts';
@@ -32,7 +32,7 @@ async function twoRevisions() {
     const { changeNumber } = await openNet(place.caller, place.netId);
     const input = {
       id,
-      reviewerId: reviewer.id,
+      reviewerIds: [reviewer.id],
       message: '',
       changeNumber,
       reasons: await reasonsFor(place.caller, place.netId),
@@ -112,7 +112,7 @@ describe('a revision that was tampered with by the owner of the database', () =>
     expect(body.payload).toBeUndefined();
     expect(logged.join()).toContain(`Revision ${revisionId} of net ${place.netId} is damaged`);
     await place.checking
-      .post(`/revisions/${revisionId}/decision`, { decision: 'accepted', note: '' })
+      .post(`/revisions/${revisionId}/decision`, { decision: 'accepted', note: '', ...SIGNATURE })
       .expect(500);
     expect(await app.db.query('SELECT 1 FROM decision WHERE revision_id = $1', [revisionId])).toEqual([]);
   }

@@ -6,7 +6,7 @@ import type { NoteDto } from '#shared/contract/notes.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { pngDrawing } from '#tests/support/drawing-files.ts';
 import { addNet } from '#tests/support/net-fixture.ts';
-import { mailsFor, sentRevision } from '#tests/support/revision-fixture.ts';
+import { mailsFor, SIGNATURE, sentRevision } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addMember } from '#tests/support/test-people.ts';
 
@@ -78,7 +78,7 @@ describe('a note that must be answered before acceptance', () => {
     const note = noteOf('Where does k come from?');
     await reviewer.caller.post(`/nets/${netId}/notes`, note).expect(201);
     await reviewer.caller.put(`/notes/${note.id}/must-answer`).expect(200);
-    const accept = { decision: 'accepted', note: '' };
+    const accept = { decision: 'accepted', note: '', ...SIGNATURE };
     const { body } = await reviewer.caller.post(`/revisions/${revisionId}/decision`, accept);
     expect(body).toMatchObject({
       status: 409,

@@ -3,7 +3,7 @@ import canonicalize from 'canonicalize';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import { FLOW_NET_VERSION } from '#shared/contract/document.ts';
 import { firstDocument, firstReading } from '#tests/support/first-version/first-version.ts';
-import { beginLine, sendInputFor, sentRevision } from '#tests/support/revision-fixture.ts';
+import { beginLine, SIGNATURE, sendInputFor, sentRevision } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { withDataSource } from '#tests/support/test-database.ts';
 
@@ -52,7 +52,7 @@ it('a revision frozen by the first version is shown with the figures that were f
 it('a revision frozen by the first version is decided on, and the next one is chained to its hash', async () => {
   const place = await olderRevision();
   const { caller, netId, revisionId, reviewer, hash } = place;
-  const back = { decision: 'returned', note: 'Line 3 is off.' };
+  const back = { decision: 'returned', note: 'Line 3 is off.', ...SIGNATURE };
   await reviewer.caller.post(`/revisions/${revisionId}/decision`, back).expect(201);
   await beginLine(caller, netId);
   const input = await sendInputFor(place, reviewer.person.id);

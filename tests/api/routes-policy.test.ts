@@ -127,7 +127,7 @@ async function furnish(netId: string, sheetId: string): Promise<Record<string, s
   const { changeNumber } = await openNet(callers.engineer, netId);
   const sending = {
     id: revisionId,
-    reviewerId: ids.reviewerPerson,
+    reviewerIds: [ids.reviewerPerson],
     message: '',
     changeNumber,
     reasons: await reasonsFor(callers.engineer, netId),

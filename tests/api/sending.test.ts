@@ -1,6 +1,8 @@
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { PersonEntity } from '#server/entities/person-entity.ts';
+import { remindReviewers } from '#server/services/review-reminders.ts';
+import { inTransaction } from '#server/services/service-deps.ts';
 import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import { netReading } from '#shared/contract/reading.ts';
@@ -10,6 +12,7 @@ import {
   beginLine,
   mailsFor,
   readyToSend,
+  SIGNATURE,
   sendInputFor,
 } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
@@ -226,5 +229,140 @@ describe('sending for checking', () => {
     const input = await sendInputFor(place, place.reviewer.person.id);
     await place.reviewer.caller.post(`/nets/${place.netId}/revisions`, input).expect(403);
     await place.reviewer.caller.get(`/nets/${place.netId}/sending`).expect(403);
+  });
+});
+
+describe('several reviewers', () => {
+  const accept = { decision: 'accepted', note: '', ...SIGNATURE };
+
+  async function sentToTwo() {
+    const place = await readyToSend(app);
+    const second = await addRolePerson(app, place.damId, 'Lena Fogh', 'reviewer');
+    const input = await sendInputFor(place, place.reviewer.person.id, second.person.id);
+    const url = `/nets/${place.netId}/revisions`;
+    const { body } = await place.caller.post(url, input).expect(201);
+    expect(body.reviewers.map((each: { name: string }) => each.name)).toEqual(['Remi Okafor', 'Lena Fogh']);
+    return { ...place, second, url: `/revisions/${input.id}/decision`, revisionId: input.id };
+  }
+
+  it('are all mailed, and the revision is accepted when each of them has accepted', async () => {
+    const { reviewer, second, url, netId, caller } = await sentToTwo();
+    expect(await mailsFor(app, second.person.id)).toHaveLength(1);
+    const first = await reviewer.caller.post(url, accept).expect(201);
+    expect(first.body.summary).toMatchObject({ state: 'waiting', decision: null });
+    expect(first.body.decideRefusal).toMatch(/waits for the other reviewers/);
+    await reviewer.caller.post(url, accept).expect(409);
+    expect((await openNet(caller, netId)).net.state).toBe('sent');
+    const last = await second.caller.post(url, accept).expect(201);
+    expect(last.body.summary).toMatchObject({
+      state: 'accepted',
+      decision: { decidedBy: { name: 'Lena Fogh' } },
+    });
+    expect((await openNet(caller, netId)).net.state).toBe('accepted');
+  });
+
+  it('one of them returns it for all', async () => {
+    const { reviewer, second, url } = await sentToTwo();
+    await reviewer.caller.post(url, accept).expect(201);
+    const back = { decision: 'returned', note: 'Line 3 is off.', ...SIGNATURE };
+    const { body } = await second.caller.post(url, back).expect(201);
+    expect(body.summary.state).toBe('returned');
+  });
+
+  it('are each named once, and there is at least one', async () => {
+    const place = await readyToSend(app);
+    const { id } = place.reviewer.person;
+    const url = `/nets/${place.netId}/revisions`;
+    await place.caller.post(url, await sendInputFor(place, id, id)).expect(400);
+    await place.caller.post(url, await sendInputFor(place)).expect(400);
+  });
+});
+
+describe('withdrawing a sending', () => {
+  const reason = { reason: 'The tailwater was wrong.' };
+
+  it('is a record of its own, mailed to the reviewers, after which nobody decides and the next letter is sent', async () => {
+    const place = await readyToSend(app);
+    const { caller, netId, reviewer } = place;
+    const input = await sendInputFor(place, reviewer.person.id);
+    await caller.post(`/nets/${netId}/revisions`, input).expect(201);
+    const url = `/revisions/${input.id}/sending-withdrawals`;
+    await reviewer.caller.post(url, reason).expect(403);
+    await caller.post(url, { reason: ' ' }).expect(400);
+    const { body } = await caller.post(url, reason).expect(201);
+    expect(body.summary).toMatchObject({ state: 'withdrawn', decision: { note: reason.reason } });
+    await caller.post(url, reason).expect(409);
+    const accept = { decision: 'accepted', note: '', ...SIGNATURE };
+    await reviewer.caller.post(`/revisions/${input.id}/decision`, accept).expect(409);
+    const subjects = (await mailsFor(app, reviewer.person.id)).map((mail) => mail.subject);
+    expect(subjects.at(-1)).toMatch(/^Withdrawn from checking: /);
+    const again = await sendInputFor(place, reviewer.person.id);
+    const sent = await caller.post(`/nets/${netId}/revisions`, again).expect(201);
+    expect(sent.body.label).toBe('B');
+  });
+
+  it('is too late once it is decided', async () => {
+    const place = await readyToSend(app);
+    const input = await sendInputFor(place, place.reviewer.person.id);
+    await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
+    const back = { decision: 'returned', note: 'Line 3 is off.', ...SIGNATURE };
+    await place.reviewer.caller.post(`/revisions/${input.id}/decision`, back).expect(201);
+    await place.caller.post(`/revisions/${input.id}/sending-withdrawals`, reason).expect(409);
+  });
+});
+
+describe('the day by which a check is wanted', () => {
+  /** A day from now, as an engineer types it. */
+  const day = (days: number) => new Date(Date.now() + days * 86_400_000).toISOString().slice(0, 10);
+
+  async function sentDue(dueOn: string) {
+    const place = await readyToSend(app);
+    const input = { ...(await sendInputFor(place, place.reviewer.person.id)), dueOn };
+    await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
+    const reminders: Array<{ id: string; kind: string; at: Date }> = await app.db.query(
+      'SELECT id, kind, at FROM review_reminder WHERE revision_id = $1 ORDER BY at',
+      [input.id],
+    );
+    return { ...place, revisionId: input.id, reminders };
+  }
+  const remind = (id: string, at: Date) =>
+    inTransaction({ ...app.deps, clock: { now: () => at } }, (tx) => remindReviewers(tx, id));
+  const remindersFor = async (personId: string) =>
+    (await mailsFor(app, personId)).filter(({ subject }) => /^(Due tomorrow|Overdue)/.test(subject));
+
+  it('may not have passed, and is frozen with the revision', async () => {
+    const place = await readyToSend(app);
+    const input = await sendInputFor(place, place.reviewer.person.id);
+    const url = `/nets/${place.netId}/revisions`;
+    await place.caller.post(url, { ...input, dueOn: day(-3) }).expect(400);
+    await place.caller.post(url, { ...input, dueOn: '2026-02-31' }).expect(400);
+    await place.caller.post(url, { ...input, dueOn: day(9) }).expect(201);
+    const { body } = await place.caller.get(`/revisions/${input.id}`).expect(200);
+    expect([body.payload.dueOn, body.summary.dueOn]).toEqual([day(9), day(9)]);
+  });
+
+  it('is reminded of once on the day before and once when it has passed', async () => {
+    const { reminders, reviewer } = await sentDue(day(9));
+    expect(reminders.map(({ kind }) => kind)).toEqual(['dayBefore', 'overdue']);
+    expect(app.jobs.queued).toContainEqual(
+      expect.objectContaining({ name: 'remind-reviewers', rowId: reminders[0]?.id }),
+    );
+    for (const { id, at } of reminders) {
+      await remind(id, new Date(at.getTime() - 1000));
+      await remind(id, at);
+      await Promise.all([remind(id, at), remind(id, at)]);
+    }
+    expect((await remindersFor(reviewer.person.id)).map(({ subject }) => subject.split(':')[0])).toEqual([
+      'Due tomorrow for checking',
+      'Overdue for checking',
+    ]);
+  });
+
+  it('is not reminded of once the revision is decided', async () => {
+    const { reminders, reviewer, revisionId } = await sentDue(day(9));
+    const back = { decision: 'returned', note: 'Line 3 is off.', ...SIGNATURE };
+    await reviewer.caller.post(`/revisions/${revisionId}/decision`, back).expect(201);
+    for (const { id, at } of reminders) await remind(id, at);
+    expect(await remindersFor(reviewer.person.id)).toEqual([]);
   });
 });

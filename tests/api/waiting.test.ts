@@ -4,7 +4,7 @@ import { RenderJobEntity, SheetEntity } from '#server/entities/drawing-entity.ts
 import type { DamRole } from '#shared/contract/actions.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { addFinishedNet, addNet, addSheet, openNet } from '#tests/support/net-fixture.ts';
-import { reasonsFor } from '#tests/support/revision-fixture.ts';
+import { reasonsFor, SIGNATURE } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
@@ -39,7 +39,7 @@ async function sent() {
   const { changeNumber } = await openNet(place.caller, place.netId);
   const input = {
     id: revisionId,
-    reviewerId: reviewer.person.id,
+    reviewerIds: [reviewer.person.id],
     message: '',
     changeNumber,
     reasons: await reasonsFor(place.caller, place.netId),
@@ -56,7 +56,7 @@ describe('what waits', () => {
     expect(item).toMatchObject({ kind: 'check', netId, revisionId });
     expect(item?.text).toMatch(/^Check revision A of Section /);
     expect(await waitingFor(second.caller)).toEqual([]);
-    const decision = { decision: 'returned', note: 'Line 4 crosses the drain.' };
+    const decision = { decision: 'returned', note: 'Line 4 crosses the drain.', ...SIGNATURE };
     await reviewer.caller.post(`/revisions/${revisionId}/decision`, decision).expect(201);
     expect(await waitingFor(reviewer.caller)).toEqual([]);
     const back = (await waitingFor(caller)).find((each) => each.kind === 'returned');

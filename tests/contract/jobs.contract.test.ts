@@ -42,6 +42,7 @@ describe.each(adapters)('background work in %s', (_name, create) => {
     'send-mail': send,
     'make-calculation-sheet': nothing,
     'make-rendition': nothing,
+    'remind-reviewers': nothing,
   });
   const rowId = () => crypto.randomUUID();
   const until = async (isTrue: () => boolean) => {
@@ -157,6 +158,7 @@ describe.each(adapters)('background work in %s', (_name, create) => {
       'send-mail': note('mail'),
       'make-calculation-sheet': note('sheet'),
       'make-rendition': note('rendition'),
+      'remind-reviewers': note('reminder'),
     });
     await jobs.enqueue(db.manager, 'render-drawing', rowId());
     await until(() => ran.length > 0);
@@ -211,6 +213,7 @@ describe('the queue in PostgreSQL', () => {
       'render-drawing': async () => {},
       'make-calculation-sheet': async () => {},
       'make-rendition': async () => {},
+      'remind-reviewers': async () => {},
       'send-mail': async (id) => {
         ran.push(id);
       },

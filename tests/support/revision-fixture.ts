@@ -4,7 +4,7 @@ import type { SendingDto } from '#shared/contract/revisions.ts';
 import type { Caller } from './caller.ts';
 import { addFinishedNet, batchesOf, lineOf, type NetPlaceFixture, openNet, put } from './net-fixture.ts';
 import type { TestApp } from './test-app.ts';
-import { addMember, type TestPerson } from './test-people.ts';
+import { addMember, TEST_PASSWORD, type TestPerson } from './test-people.ts';
 
 export interface SignedIn {
   person: TestPerson;
@@ -26,6 +26,9 @@ export async function addRolePerson(
   return { person, caller };
 }
 
+/** What a person of the tests signs with. */
+export const SIGNATURE = { password: TEST_PASSWORD, capacity: 'Reviewing engineer' };
+
 /** A finished net with a reviewer who did not draw it. */
 export async function readyToSend(app: TestApp): Promise<ReadyNet> {
   const place = await addFinishedNet(app);
@@ -33,10 +36,10 @@ export async function readyToSend(app: TestApp): Promise<ReadyNet> {
 }
 
 /** What sends the net as it stands to the reviewer. */
-export async function sendInputFor({ caller, netId }: NetPlaceFixture, reviewerId: string) {
+export async function sendInputFor({ caller, netId }: NetPlaceFixture, ...reviewerIds: string[]) {
   const { changeNumber } = await openNet(caller, netId);
   const reasons = await reasonsFor(caller, netId);
-  return { id: uuidv7(), reviewerId, message: 'Please look at line 3.', changeNumber, reasons };
+  return { id: uuidv7(), reviewerIds, message: 'Please look at line 3.', changeNumber, reasons };
 }
 
 /** A reason for all that is still open on the net, as the send dialog gives it. */

@@ -13,7 +13,7 @@ export interface TestPerson {
   password: string;
 }
 
-const PASSWORD = 'a long enough password';
+export const TEST_PASSWORD = 'a long enough password';
 /** Weak on purpose: tests sign many people in, and checking a hash takes what the hash says it takes. */
 const QUICK = { memoryCost: 1024, timeCost: 1, parallelism: 1 };
 
@@ -21,9 +21,9 @@ const QUICK = { memoryCost: 1024, timeCost: 1, parallelism: 1 };
 export async function addPerson(db: DataSource, name: string, { admin = false } = {}): Promise<TestPerson> {
   const id = uuidv7();
   const email = `${name.toLowerCase().replaceAll(/[^a-z]+/g, '.')}.${id.slice(-6)}@harrow-fen.example`;
-  const passwordHash = await hash(PASSWORD, QUICK);
+  const passwordHash = await hash(TEST_PASSWORD, QUICK);
   await db.getRepository(PersonEntity).insert({ id, name, email, passwordHash, admin });
-  return { id, name, email, password: PASSWORD };
+  return { id, name, email, password: TEST_PASSWORD };
 }
 
 /** A dam, made by somebody. */

@@ -2,6 +2,7 @@ import type { StayedOpen } from '#shared/contract/before-sending.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NoteDto } from '#shared/contract/notes.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
+import type { DecisionKind } from '#shared/contract/revisions.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { cautionsChapter } from './cautions.ts';
 import { doubtChapter } from './doubt.ts';
@@ -16,10 +17,12 @@ import { stayedOpenChapter } from './stayed-open.ts';
 import { titleBlock } from './title-block.ts';
 import { validityChapter } from './validity.ts';
 
-/** What the reviewer decided, as the sheet prints it. */
+/** What a reviewer decided, or a withdrawal, as the sheet prints it. */
 export interface SheetDecision {
-  decision: 'accepted' | 'returned';
+  decision: DecisionKind;
   by: string;
+  /** In what capacity it was signed; empty for what was not signed. */
+  capacity: string;
   note: string;
   at: string;
 }
@@ -38,7 +41,10 @@ export type SheetStatus =
       message: string;
       /** Null for a revision that was sent before it was asked for. */
       stayedOpen: readonly StayedOpen[] | null;
+      /** What settled the revision; null while it waits. */
       decision: SheetDecision | null;
+      /** All records, oldest first: of several reviewers, and of what was withdrawn. */
+      records: readonly SheetDecision[];
     };
 
 /** Everything that a calculation sheet is made from. Nothing is worked out anew: all figures are the reading's. */

@@ -1,5 +1,6 @@
 import type { NoteDto } from '#shared/contract/notes.ts';
-import type { SheetChapter, SheetSource } from './content.ts';
+import { DECISION_WORDS } from '#shared/text/decision-words.ts';
+import type { SheetChapter, SheetDecision, SheetSource } from './content.ts';
 import { momentText } from './words.ts';
 
 /** The notes on the net with their answers. Null without notes. */
@@ -31,7 +32,6 @@ export function recordChapter({ status, engineVersion, drawnBy }: SheetSource): 
         { kind: 'paragraph', text: 'A draft: not sent for checking, not checked, not signed.' },
       ],
     };
-  const { decision } = status;
   return {
     id: 'record',
     title: 'Decision and signatures',
@@ -43,8 +43,7 @@ export function recordChapter({ status, engineVersion, drawnBy }: SheetSource): 
           { label: 'Sent by', value: `${status.sentBy}, ${momentText(status.sentAt)}` },
           { label: 'Sent to', value: status.reviewer },
           ...(status.message === '' ? [] : [{ label: 'Message', value: status.message }]),
-          { label: 'Decision', value: decisionText(status) },
-          ...(decision?.note ? [{ label: 'Note of the reviewer', value: decision.note }] : []),
+          ...recordFacts(status),
           { label: 'SHA-256 of the record', value: status.hash },
           { label: 'SHA-256 of the one before', value: status.previousHash ?? 'none: the first revision' },
           engine,
@@ -61,10 +60,25 @@ export function recordChapter({ status, engineVersion, drawnBy }: SheetSource): 
   };
 }
 
-function decisionText({ decision, reviewer }: Extract<SheetSource['status'], { kind: 'revision' }>): string {
-  if (decision === null) return `none yet, waiting for ${reviewer}`;
-  return `${decision.decision} by ${decision.by}, ${momentText(decision.at)}`;
+/** Each record with its signature and note, and that the decision is still wanted where it is. */
+function recordFacts({ decision, records, reviewer }: Extract<SheetSource['status'], { kind: 'revision' }>) {
+  const facts = records.flatMap((record) => [
+    { label: 'Decision', value: signedText(record) },
+    ...(record.note ? [{ label: noteLabel(record), value: record.note }] : []),
+  ]);
+  if (decision !== null) return facts;
+  const none = records.length === 0 ? 'none yet, ' : '';
+  return [...facts, { label: 'Decision', value: `${none}waiting for ${reviewer}` }];
 }
+
+function signedText({ decision, by, capacity, at }: SheetDecision): string {
+  const { state } = DECISION_WORDS[decision];
+  const who = [by, capacity].filter(Boolean).join(', ');
+  return `${state} by ${who}, ${momentText(at)}${capacity ? ', signed by password' : ''}`;
+}
+
+const noteLabel = ({ decision }: SheetDecision) =>
+  decision === 'sendingWithdrawn' || decision === 'acceptanceWithdrawn' ? 'Reason' : 'Note of the reviewer';
 
 /**
  * The notes as they stood at a moment: what was written or closed later is left out, so that a decided revision gives

@@ -1,19 +1,20 @@
 import type { NoteDto } from '#shared/contract/notes.ts';
-import type { RevisionPayload, RevisionSummary } from '#shared/contract/revisions.ts';
-import type { SheetSource } from './content.ts';
+import type { DecisionDto, RevisionPayload, RevisionSummary } from '#shared/contract/revisions.ts';
+import { namesText } from '#shared/text/names-text.ts';
+import type { SheetDecision, SheetSource } from './content.ts';
 import { notesUntil } from './record.ts';
 
 /** What a revision's sheet is made from: the frozen payload, the decision, and the notes up to it. */
 export function revisionSource({
   payload,
   hash,
-  decision,
+  summary: { decision, decisions },
   notes,
   jobNumber,
 }: {
   payload: RevisionPayload;
   hash: string;
-  decision: RevisionSummary['decision'];
+  summary: Pick<RevisionSummary, 'decision' | 'decisions'>;
   notes: readonly NoteDto[];
   jobNumber: string;
 }): SheetSource {
@@ -26,15 +27,11 @@ export function revisionSource({
       previousHash: payload.previousHash,
       sentAt: payload.sentAt,
       sentBy: payload.sentBy.name,
-      reviewer: payload.reviewer.name,
+      reviewer: namesText(payload.reviewers),
       message: payload.message,
       stayedOpen: payload.stayedOpen,
-      decision: decision && {
-        decision: decision.decision,
-        by: decision.decidedBy.name,
-        note: decision.note,
-        at: decision.decidedAt,
-      },
+      decision: decision && sheetDecision(decision),
+      records: decisions.map(sheetDecision),
     },
     jobNumber,
     dam,
@@ -49,3 +46,19 @@ export function revisionSource({
     notes: decision === null ? notes : notesUntil(notes, decision.decidedAt),
   };
 }
+
+/** Under the name that was signed with, which later changes of the person's name leave as it is. */
+const sheetDecision = ({
+  decision,
+  decidedBy,
+  signedName,
+  capacity,
+  note,
+  decidedAt,
+}: DecisionDto): SheetDecision => ({
+  decision,
+  by: signedName || decidedBy.name,
+  capacity,
+  note,
+  at: decidedAt,
+});

@@ -1,5 +1,6 @@
 import { type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
+import { DECISION_WORDS } from '#shared/text/decision-words.ts';
 import { fixedText, NO_FIGURE, plainText } from '#shared/text/number-text.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
@@ -108,5 +109,5 @@ function headPerDropText({ unitSystem }: FlowNetDocument, { quantities }: NetRea
 function checkedText(status: SheetStatus): string {
   if (status.kind === 'draft') return 'not sent for checking';
   if (status.decision === null) return `waiting for ${status.reviewer}`;
-  return `${status.decision.decision} by ${status.decision.by}, ${momentText(status.decision.at)}`;
+  return `${DECISION_WORDS[status.decision.decision].state} by ${status.decision.by}, ${momentText(status.decision.at)}`;
 }

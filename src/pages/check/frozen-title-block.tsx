@@ -3,6 +3,7 @@ import { TitleBlock } from '#client/features/desk/components/title-block.tsx';
 import { titleBlockCells } from '#client/features/desk/components/title-block-cells.ts';
 import { formatFullDay } from '#client/lib/dates.ts';
 import { shortName } from '#client/lib/initials.ts';
+import { revisionStateText } from '#client/text/revisions.ts';
 import { titleBlockText as text } from '#client/text/title-block.ts';
 import type { RevisionDto } from '#shared/contract/revisions.ts';
 
@@ -22,7 +23,13 @@ export function FrozenTitleBlock({ revision }: { revision: RevisionDto }) {
   return <TitleBlock cells={cells} stale={false} open={null} onStep={null} />;
 }
 
-function checkedIn({ decision, reviewer }: RevisionDto['summary']): string {
-  const name = shortName((decision?.decidedBy ?? reviewer).name);
-  return text.checkedBy[decision?.decision ?? 'sent'](name);
+function checkedIn({ state, decision, decisions, reviewers }: RevisionDto['summary']): string {
+  const signed = (signedName: string, name: string) => shortName(signedName || name);
+  if (state === 'accepted' || state === 'acceptedWithNotes') {
+    // Each of several reviewers has checked it.
+    const names = decisions.map((each) => signed(each.signedName, each.decidedBy.name));
+    return revisionStateText[state](names.join(', '));
+  }
+  const name = decision ? signed(decision.signedName, decision.decidedBy.name) : null;
+  return revisionStateText[state](name ?? reviewers.map((each) => shortName(each.name)).join(', '));
 }

@@ -17,8 +17,8 @@ export function SheetPage() {
   const { data: revision } = useSuspenseQuery(revisionQuery(revisionId));
   const content = useMemo(() => {
     const { payload, summary, notes } = revision;
-    const { hash, decision } = summary;
-    return sheetContent(revisionSource({ payload, hash, decision, notes, jobNumber: '' }));
+    const { hash } = summary;
+    return sheetContent(revisionSource({ payload, hash, summary, notes, jobNumber: '' }));
   }, [revision]);
   return (
     <main id="content" className="mx-auto max-w-[1000px] bg-white px-6 py-5 text-base print:p-0">

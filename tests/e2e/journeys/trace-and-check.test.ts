@@ -26,7 +26,7 @@ import {
 } from '#tests/support/journey/desk-steps.ts';
 import { addDrawings, openNewNet } from '#tests/support/journey/drawing-steps.ts';
 import { type JourneyWorld, openWorld } from '#tests/support/journey/journey-world.ts';
-import { sendForChecking } from '#tests/support/journey/send-steps.ts';
+import { sendForChecking, signAs } from '#tests/support/journey/send-steps.ts';
 import { type SmtpStandIn, startSmtpStandIn } from '#tests/support/smtp-stand-in.ts';
 
 let smtp: SmtpStandIn;
@@ -126,6 +126,7 @@ describe('from a scan to a decision', () => {
     await scheduleRow(reviewer, 'P2').waitFor();
     await reviewer.getByText('The apron was underpinned in 1974.').waitFor();
     await reviewer.getByLabel('Note to the engineer').fill('Trace the last equipotential again.');
+    await signAs(reviewer, world.reviewer);
     await reviewer.getByRole('button', { name: 'Return' }).click();
     await reviewer
       .getByText(/^Returned by/)
@@ -140,7 +141,8 @@ describe('from a scan to a decision', () => {
     await engineer.getByText(/^Revision B has been sent/).waitFor();
     const [revisionB] = await world.server.db.query("SELECT id FROM revision WHERE label = 'B'");
     await reviewer.goto(`/revisions/${revisionB.id}`);
-    await reviewer.getByRole('button', { name: 'Accept' }).click();
+    await signAs(reviewer, world.reviewer);
+    await reviewer.getByRole('button', { name: 'Accept', exact: true }).click();
     await reviewer
       .getByText(/^Accepted by/)
       .first()

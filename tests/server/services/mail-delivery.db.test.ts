@@ -166,6 +166,7 @@ describe('the worker and a real mail server', () => {
       'send-mail': createSendMailHandler(deps),
       'make-calculation-sheet': async () => {},
       'make-rendition': async () => {},
+      'remind-reviewers': async () => {},
     });
   }
   const writeReal = () =>

@@ -14,6 +14,13 @@ import { randomReadings } from '#tests/support/exact-nets/random-readings.ts';
 const { net, pxPerUnit } = EXACT_NETS[0]!;
 const document = exactNetDocument(net, { pxPerUnit, readings: randomReadings(net, 12, 5) });
 const reading = readNet(document);
+const ACCEPTED = {
+  decision: 'accepted',
+  by: 'Remi Okafor',
+  capacity: 'Reviewing engineer',
+  note: '',
+  at: '2026-11-05T14:00:00.000Z',
+} as const;
 const HASH = 'a3'.repeat(32);
 
 const source = (more: Partial<SheetSource> = {}): SheetSource => ({
@@ -29,7 +36,8 @@ const source = (more: Partial<SheetSource> = {}): SheetSource => ({
     stayedOpen: [
       { key: 'noDatum', about: 'datum', text: 'The vertical datum has no name.', reason: 'Local gauge.' },
     ],
-    decision: { decision: 'accepted', by: 'Remi Okafor', note: '', at: '2026-11-05T14:00:00.000Z' },
+    decision: ACCEPTED,
+    records: [ACCEPTED],
   },
   jobNumber: 'J-2207',
   dam: { name: 'High Fell' },

@@ -15,3 +15,9 @@ export async function sendForChecking(page: Page): Promise<void> {
   await send.click();
   await dialog.waitFor({ state: 'detached' });
 }
+
+/** Fills in what a decision is signed with. */
+export async function signAs(page: Page, { password }: { password: string }): Promise<void> {
+  await page.getByLabel('In what capacity you sign').fill('Reviewing engineer');
+  await page.getByLabel('Your password, to sign').fill(password);
+}

@@ -1,7 +1,8 @@
 import type { ReactNode } from 'react';
-import { formatMoment } from '#client/lib/dates.ts';
+import { formatFullDay, formatMoment } from '#client/lib/dates.ts';
 import { checkText as text } from '#client/text/revisions.ts';
 import type { RevisionDto } from '#shared/contract/revisions.ts';
+import { namesText } from '#shared/text/names-text.ts';
 
 /** What identifies the frozen record: who and when, what it was made from, and the chain it stands in. */
 export function RecordFacts({ revision }: { revision: RevisionDto }) {
@@ -15,8 +16,9 @@ export function RecordFacts({ revision }: { revision: RevisionDto }) {
       <p className="m-0 text-ink-2">{text.frozen}</p>
       <dl className="m-0 mt-1 flex flex-col gap-1">
         <Fact name={text.sentBy(summary.sentBy.name, formatMoment(summary.sentAt))}>
-          {text.to(summary.reviewer.name)}
+          {text.to(namesText(summary.reviewers))}
         </Fact>
+        {summary.dueOn ? <Fact name={text.dueOn}>{formatFullDay(`${summary.dueOn}T12:00:00`)}</Fact> : null}
         <Fact name={text.drawnBy}>{payload.drawnBy.map((person) => person.name).join(', ')}</Fact>
         {payload.message ? <Fact name={text.message}>{payload.message}</Fact> : null}
         <Fact name={text.hash}>

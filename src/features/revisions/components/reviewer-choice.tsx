@@ -1,17 +1,18 @@
-import { useId } from 'react';
 import { sendingText as text } from '#client/text/revisions.ts';
 import type { SendingDto } from '#shared/contract/revisions.ts';
 
 interface ReviewerChoiceProps {
   reviewers: SendingDto['reviewers'];
-  chosen: string;
+  chosen: readonly string[];
   fault: string | null;
-  onChoose: (personId: string) => void;
+  onChoose: (personIds: string[]) => void;
 }
 
-/** Reviewers of the dam. Those who drew are shown, so that nobody looks for them, but cannot be chosen. */
+const toggled = (chosen: readonly string[], id: string) =>
+  chosen.includes(id) ? chosen.filter((each) => each !== id) : [...chosen, id];
+
+/** Reviewers of the dam; one or several check. Those who drew are shown, so that nobody looks for them, but cannot be chosen. */
 export function ReviewerChoice({ reviewers, chosen, fault, onChoose }: ReviewerChoiceProps) {
-  const name = useId();
   return (
     <fieldset className="m-0 border-0 p-0">
       <legend className="p-0 text-sm font-semibold">{text.reviewer}</legend>
@@ -21,18 +22,18 @@ export function ReviewerChoice({ reviewers, chosen, fault, onChoose }: ReviewerC
       {reviewers.map(({ person, email, drew }) => (
         <label key={person.id} className="touch flex items-center gap-2 py-1">
           <input
-            type="radio"
-            name={name}
+            type="checkbox"
             className="size-4 shrink-0 accent-ink"
             disabled={drew}
-            checked={chosen === person.id}
-            onChange={() => onChoose(person.id)}
+            checked={chosen.includes(person.id)}
+            onChange={() => onChoose(toggled(chosen, person.id))}
           />
           <span className="min-w-0 break-words">
             {person.name} <span className="text-ink-2">{drew ? text.drew : email}</span>
           </span>
         </label>
       ))}
+      {chosen.length > 1 ? <p className="m-0 text-sm text-ink-2">{text.allHaveToAccept}</p> : null}
       {fault ? (
         <p role="alert" className="m-0 text-sm text-wrong">
           {fault}

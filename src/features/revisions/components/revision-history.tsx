@@ -5,7 +5,14 @@ import { paths } from '#client/lib/paths.ts';
 import { checkText as text } from '#client/text/revisions.ts';
 import type { RevisionSummary } from '#shared/contract/revisions.ts';
 
-const STATE_COLOURS = { accepted: 'text-good', returned: 'text-wrong', waiting: 'text-attention' };
+const STATE_COLOURS: Record<RevisionSummary['state'], string> = {
+  waiting: 'text-attention',
+  accepted: 'text-good',
+  acceptedWithNotes: 'text-good',
+  returned: 'text-wrong',
+  acceptanceWithdrawn: 'text-wrong',
+  withdrawn: 'text-ink-2',
+};
 
 /** The revisions of a net, newest first, each with its state. */
 export function RevisionHistory({
@@ -25,7 +32,7 @@ export function RevisionHistory({
           <Title revision={revision} present={revision.id === presentId} />
           <span className="block text-ink-2">
             {text.sentBy(shortName(revision.sentBy.name), formatFullDay(revision.sentAt))},{' '}
-            {text.to(shortName(revision.reviewer.name))}
+            {text.to(revision.reviewers.map(({ name }) => shortName(name)).join(', '))}
           </span>
           {revision.decision?.note ? (
             <span className="block break-words whitespace-pre-line">{revision.decision.note}</span>
@@ -37,7 +44,7 @@ export function RevisionHistory({
 }
 
 function Title({ revision, present }: { revision: RevisionSummary; present: boolean }) {
-  const state = revision.decision?.decision ?? 'waiting';
+  const { state, supersededBy } = revision;
   const heading = text.heading(revision.label);
   return (
     <span className="flex flex-wrap gap-x-2">
@@ -50,7 +57,10 @@ function Title({ revision, present }: { revision: RevisionSummary; present: bool
           {heading}
         </Link>
       )}
-      <span className={STATE_COLOURS[state]}>{text.state[state]}</span>
+      <span className={STATE_COLOURS[state]}>
+        {text.state[state]}
+        {supersededBy ? `, ${text.supersededShort(supersededBy)}` : ''}
+      </span>
     </span>
   );
 }

@@ -3,7 +3,7 @@ import { type FormEvent, useState } from 'react';
 import { v7 as uuidv7 } from 'uuid';
 import { Button } from '#client/components/button.tsx';
 import { Actions, Dialog } from '#client/components/dialog.tsx';
-import { TextArea } from '#client/components/field.tsx';
+import { TextArea, TextField } from '#client/components/field.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { commonText } from '#client/text/common.ts';
 import { sendingText as text } from '#client/text/revisions.ts';
@@ -48,7 +48,10 @@ function SendForm({
   sending,
 }: SendDialogProps & { sending: SendingDto }) {
   const free = sending.reviewers.filter((reviewer) => !reviewer.drew);
-  const [reviewerId, setReviewerId] = useState(free.length === 1 ? (free[0]?.person.id ?? '') : '');
+  const [reviewerIds, setReviewerIds] = useState(
+    free.length === 1 ? free.map(({ person }) => person.id) : [],
+  );
+  const [dueOn, setDueOn] = useState('');
   const [message, setMessage] = useState('');
   const [fault, setFault] = useState<string | null>(null);
   const [reasons, setReasons] = useState<Reasons>({});
@@ -58,7 +61,8 @@ function SendForm({
   const send = useSendForChecking(netId);
   const input = () => ({
     id,
-    reviewerId,
+    reviewerIds,
+    dueOn: dueOn || null,
     message,
     changeNumber,
     reasons: sending.open.map(({ key }) => ({ key, reason: reasons[key] ?? '' })),
@@ -67,7 +71,7 @@ function SendForm({
     event.preventDefault();
     if (send.isPending) return;
     setAsked(true);
-    if (reviewerId === '') setFault(text.chooseReviewer);
+    if (reviewerIds.length === 0) setFault(text.chooseReviewer);
     else if (missing === 0) send.mutate(input(), { onSuccess: onSent });
   };
   const refused = sending.refusal !== null || free.length === 0;
@@ -80,12 +84,20 @@ function SendForm({
       <StillOpen sending={sending} reasons={reasons} asked={asked} onReasons={setReasons} />
       <ReviewerChoice
         reviewers={sending.reviewers}
-        chosen={reviewerId}
+        chosen={reviewerIds}
         fault={fault}
         onChoose={(next) => {
-          setReviewerId(next);
+          setReviewerIds(next);
           setFault(null);
         }}
+      />
+      <TextField
+        label={text.dueOn}
+        hint={text.dueOnHint}
+        type="date"
+        className="max-w-[220px]"
+        value={dueOn}
+        onChange={(event) => setDueOn(event.target.value)}
       />
       <TextArea
         label={text.message}
