@@ -17,7 +17,7 @@ const CONNECTIONS = 10;
 const RUNS = 3;
 
 /** A sheet without tiles: nothing here looks at them. */
-async function addSheet(stand: BenchStand, client: ApiClient): Promise<string> {
+export async function addSheet(stand: BenchStand, client: ApiClient): Promise<string> {
   const [drawingId, sheetId] = [uuidv7(), uuidv7()];
   const db = await createDataSource({ url: stand.ownerUrl, poolSize: 1 }).initialize();
   await db.getRepository(DrawingEntity).insert({
