@@ -35,6 +35,7 @@ export function NetNotes({ netId, damId, notes, can, onSheet }: NetNotesProps) {
         notes.choose(note);
         onSheet();
       }}
+      onNextOpen={notes.nextOpen}
       writingAt={notes.writingAt}
       onWriteAt={notes.setWritingAt}
       onWritten={(note) => {

@@ -6,6 +6,8 @@ import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
 import { isAnchorGone, placeOfNote } from '#client/features/desk/model/note-places.ts';
 import type { NoteBalloon } from '#client/features/desk/render/build-scene.ts';
 import { notesQuery } from '#client/features/notes/api/note-queries.ts';
+import { useNextOpenKey } from '#client/features/notes/hooks/use-next-open-key.ts';
+import { nextOpenNote } from '#client/features/notes/model/note-filter.ts';
 import { notesText } from '#client/text/notes.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NoteAnchor, NoteDto } from '#shared/contract/notes.ts';
@@ -30,6 +32,14 @@ export function useDeskNotes(netId: string, store: DeskStore) {
     const place = placeOfNote(note.anchor, document, reading);
     if (place) store.lookAt(place);
   };
+  const nextOpen = () => {
+    const next = nextOpenNote(notes, chosenId);
+    if (!next) return;
+    choose(next);
+    // Brings the notes to the front, whatever stands in their place.
+    store.emitIntent({ type: 'openNote', noteId: next.id });
+  };
+  useNextOpenKey(nextOpen);
   useNoteOfAddress(data, choose);
   return {
     notes,
@@ -42,6 +52,7 @@ export function useDeskNotes(netId: string, store: DeskStore) {
     setChosenId,
     targetOf: (anchor: NoteAnchor) => targetOf(anchor, document),
     choose,
+    nextOpen,
   };
 }
 

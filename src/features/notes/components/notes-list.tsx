@@ -2,8 +2,7 @@ import { useEffect, useState } from 'react';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { notesText as text } from '#client/text/notes.ts';
 import type { NoteAnchor, NoteDto } from '#shared/contract/notes.ts';
-import { useNextOpenKey } from '../hooks/use-next-open-key.ts';
-import { filterNotes, NO_FILTER, nextOpenNote } from '../model/note-filter.ts';
+import { filterNotes, NO_FILTER } from '../model/note-filter.ts';
 import { NewNote } from './new-note.tsx';
 import { NoteItem, type NotesReader } from './note-item.tsx';
 import { ACTION } from './note-looks.ts';
@@ -19,6 +18,7 @@ export interface NotesListProps {
   reader: NotesReader;
   chosenId: string | null;
   onChoose: ((note: NoteDto) => void) | null;
+  onNextOpen: () => void;
   /** What the note about to be written is on; null when none is. */
   writingAt: NoteAnchor | null;
   onWriteAt: (anchor: NoteAnchor) => void;
@@ -34,11 +34,6 @@ export function NotesList(props: NotesListProps) {
   const through = filterNotes(notes, filter, reader.ownId);
   // What was chosen on the sheet is shown whatever the filter says.
   const shown = notes.filter((note) => note.id === chosenId || through.includes(note));
-  const goOn = () => {
-    const next = nextOpenNote(notes, chosenId);
-    if (next) onChoose?.(next);
-  };
-  useNextOpenKey(goOn);
   useChosenInView(chosenId);
   const empty = notes.length === 0 && !props.error && !props.writingAt;
   return (
@@ -50,8 +45,8 @@ export function NotesList(props: NotesListProps) {
             {text.onDrawing}
           </button>
         ) : null}
-        {onChoose && notes.some((note) => note.state === 'open') ? (
-          <button type="button" className={ACTION} title={text.nextOpenHint} onClick={goOn}>
+        {notes.some((note) => note.state === 'open') ? (
+          <button type="button" className={ACTION} title={text.nextOpenHint} onClick={props.onNextOpen}>
             {text.nextOpen}
           </button>
         ) : null}
