@@ -102,6 +102,6 @@ const enSheetAidsText = {
   invert: 'Invert the scan',
   liveHelp: 'Figures beside the pointer',
   liveHelpHint: 'Elevation, head, angles and cells while a line is drawn. Q reads them out.',
-  viewHint: 'On this screen only; nothing of it is printed or kept with the net.',
+  viewHint: 'On this screen, and in pictures printed or saved from it; not kept with the net.',
 } as const;
 export const sheetAidsText = inLanguage({ en: enSheetAidsText });

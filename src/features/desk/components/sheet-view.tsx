@@ -166,7 +166,8 @@ export function SheetView({
           <ZoomBar views={views} />
         </div>
       </div>
-      <div className="pointer-events-none absolute inset-x-3 bottom-3 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
+      {/* Above the labels of the grid, which stand along the foot. */}
+      <div className="pointer-events-none absolute inset-x-3 bottom-8 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
         <div className="flex flex-col items-start gap-2">
           <HiddenHint store={store} />
           <CrosshairBar
@@ -201,7 +202,7 @@ function newest(raster: SheetRaster, { tiles }: SheetDto): SheetRaster {
   return raster.tiles.rendition === tiles.rendition ? { ...raster, tiles } : raster;
 }
 
-const MAGNIFIER_CORNER_PX = 210;
+const MAGNIFIER_CORNER_PX = 230;
 
 /** True when the pointer is about to go under the magnified view, which then moves to the other side. */
 function isUnderMagnifier(at: SheetPx | null, view: Viewport): boolean {
