@@ -9,6 +9,8 @@ export const VIEW = { width: 1440, height: 900 };
 /** Over the sheet, clear of what lies on it. */
 export const MIDDLE: readonly [number, number] = [VIEW.width / 2, VIEW.height / 2.6];
 export const STEPS = 120;
+/** A shared machine may be slow; what is measured is processor time. */
+const PATIENCE_MS = 120_000;
 
 /** Chromium with software rendering, as most virtual machines have it. */
 export const openChromium = async (): Promise<Browser> =>
@@ -34,8 +36,8 @@ export async function openDesk(
   netId: string,
 ): Promise<Page> {
   const page = await (await signedInContext(browser, stand, client)).newPage();
-  await page.goto(`${stand.address}/nets/${netId}`, { waitUntil: 'networkidle' });
-  await page.locator('canvas').first().waitFor();
+  await page.goto(`${stand.address}/nets/${netId}`, { waitUntil: 'networkidle', timeout: PATIENCE_MS });
+  await page.locator('canvas').first().waitFor({ timeout: PATIENCE_MS });
   return page;
 }
 

@@ -5,7 +5,9 @@ import { firstLoad } from './first-load.ts';
 import { firstView } from './first-view-bench.ts';
 import { independentSolution } from './independent-bench.ts';
 import { inkFollow } from './ink-follow.ts';
+import { pageMemory } from './page-memory.ts';
 import { panFrame } from './pan-frame.ts';
+import { dragVertex, panFrameE600 } from './pan-frame-e600.ts';
 import { fieldSolve, readingError, reread200, wholeNet60 } from './reading-bench.ts';
 import { renderMemory } from './render-memory.ts';
 import { scheduleApi } from './schedule-api.ts';
@@ -22,6 +24,9 @@ const benches: readonly Bench[] = [
   firstView,
   renderMemory,
   panFrame,
+  panFrameE600,
+  dragVertex,
+  pageMemory,
   firstLoad,
   scheduleApi,
   independentSolution,
