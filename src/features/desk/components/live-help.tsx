@@ -36,8 +36,8 @@ const AWAY_PX = 18;
 /** A wide guess: it only says on which side there is room. */
 const CHARACTER_PX = 6.6;
 const LINE_PX = 18;
-/** Under the readout of the pointer, where a finger seldom is. */
-const CORNER = { left: '12px', top: '56px' };
+/** Under the readout of the place, which a narrow sheet shows in its second row; a finger is seldom there. */
+const CORNER = { left: '12px', top: '96px' };
 /** Words over the scan are read by a halo of the paper's colour, as the marks on it are. */
 const HALO: CSSProperties = {
   textShadow: Array.from({ length: 5 }, () => '0 0 2px var(--color-film)').join(', '),
@@ -49,7 +49,8 @@ function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> 
   const documentRevision = useStore(store, (state) => state.documentRevision);
   const view = useStore(views, (state) => state.view);
   const setOut = useMemo(() => readSetOut(document), [document]);
-  const words = helpWords(shown, wordsOfPlace(shown.at, document, setOut), {
+  // In the corner they stand right under the readout, which tells the place already.
+  const words = helpWords(shown, touched ? [] : wordsOfPlace(shown.at, document, setOut), {
     document,
     reading,
     documentRevision,
