@@ -3,8 +3,10 @@ import { NetEntity } from '#server/entities/net-entity.ts';
 import { PersonEntity } from '#server/entities/person-entity.ts';
 import { readDocument } from '#server/services/net-document.ts';
 import { placeOfNet } from '#server/services/net-place.ts';
+import { readInThread } from '#server/services/reading-threads.ts';
+import { openItemsOf } from '#server/services/sending-queries.ts';
 import { createSendingService } from '#server/services/sending-service.ts';
-import { inTransaction } from '#server/services/service-deps.ts';
+import { inTransaction, type ServiceDeps } from '#server/services/service-deps.ts';
 import { addDemoDam, addDemoDrawing } from './demo-drawings.ts';
 import { demoId } from './demo-ids.ts';
 import { apronNet, fullSupplyNet, halfTracedNet, sectionCCKnownPoints } from './demo-nets.ts';
@@ -61,7 +63,21 @@ async function sendApron(deps: AppDeps): Promise<void> {
   await inTransaction(deps, async (tx) => {
     const { changeNumber } = await tx.manager.findOneByOrFail(NetEntity, { id: apron });
     const message = 'The tailwater is the lowest of the last ten years. Please check S3 first.';
-    const input = { id: demoId(70), reviewerId: reviewer.id, message, changeNumber: Number(changeNumber) };
+    const input = {
+      id: demoId(70),
+      reviewerIds: [reviewer.id],
+      dueOn: null,
+      message,
+      reasons: await demoReasons(tx),
+      changeNumber: Number(changeNumber),
+    };
     await createSendingService(tx).send(apron, input, engineer);
   });
+}
+
+/** What is open on the demo's net stays open, as somebody would say it. */
+async function demoReasons({ manager }: ServiceDeps) {
+  const document = await readDocument(manager, await placeOfNet(manager, apron));
+  const open = await openItemsOf(manager, apron, document, await readInThread(document));
+  return open.map(({ key }) => ({ key, reason: 'As on the drawing of 1974; nothing better is known.' }));
 }
