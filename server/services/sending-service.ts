@@ -9,6 +9,7 @@ import type { PersonRef } from '#shared/contract/common.ts';
 import type { RevisionPayload, RevisionSummary, sendInput } from '#shared/contract/revisions.ts';
 import { namesText } from '#shared/text/names-text.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
+import { changesSinceRevision } from './changes-since.ts';
 import { revisionFacts, scheduleFigures } from './checking-letters.ts';
 import { writeEvent } from './event-writer.ts';
 import { queueMail } from './mail-service.ts';
@@ -52,7 +53,7 @@ export function createSendingService(deps: SendingDeps) {
     const { payload, reviewers } = await draw(place, previous, input, actor);
     const hash = await insertRevision(payload, numberAfter(previous), changeNumber);
     await planReminders(deps, { revisionId: input.id, dueOn: input.dueOn });
-    await tell(payload, hash, place, reviewers, actor);
+    await tell({ payload, hash, previous }, place, reviewers, actor);
     return revisionSummaryOf(manager, input.id);
   }
 
@@ -113,8 +114,7 @@ export function createSendingService(deps: SendingDeps) {
   }
 
   async function tell(
-    payload: RevisionPayload,
-    hash: string,
+    { payload, hash, previous }: { payload: RevisionPayload; hash: string; previous: RevisionEntity | null },
     place: NetPlace,
     reviewers: readonly Reviewer[],
     actor: Actor,
@@ -125,6 +125,7 @@ export function createSendingService(deps: SendingDeps) {
       sentBy: actor.name,
       message,
       dueOn: payload.dueOn,
+      changes: previous && (await changesSinceRevision(manager, previous.id, payload)),
       figures: scheduleFigures(payload),
       hash,
       url: `${config.publicUrl}/revisions/${revisionId}`,

@@ -67,6 +67,8 @@ describe('deciding', () => {
     const first = await reviewer.caller.get(`/revisions/${revisionId}`).expect(200);
     const opened = await reviewer.caller.get(`/revisions/${input.id}`).expect(200);
     expect(opened.body.payload.previousHash).toBe(first.body.summary.hash);
+    const [, again] = await mailsFor(app, reviewer.person.id);
+    expect(again?.text).toContain('Since the revision before:\n1 line added.\n');
   });
 
   it('is refused to who drew, also when an engineer and reviewer in one person', async () => {

@@ -29,6 +29,8 @@ export interface SentForCheckingData extends RevisionFacts {
   message: string;
   /** The day by which the check is wanted, YYYY-MM-DD; null where none was named. */
   dueOn: string | null;
+  /** What changed since the revision before, in sentences; null for the first. */
+  changes: string[] | null;
   /** The schedule's main figures as frozen, already formatted. */
   figures: Figures | null;
   /** SHA-256 of the frozen record: kept in a mailbox, it is a copy that nobody can rewrite together with the database. */
@@ -42,6 +44,7 @@ export function sentForCheckingMail(data: SentForCheckingData): Letter {
     paragraphs: [
       `${data.sentBy} asks you to check a flow net.`,
       ...(data.message ? [`Message: ${data.message}`] : []),
+      ...(data.changes ? [`Since the revision before:\n${data.changes.join('\n')}`] : []),
     ],
     facts: [
       ...factsOf(data),

@@ -2,11 +2,13 @@ import { useQuery, useSuspenseQuery } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import { useParams } from 'react-router-dom';
 import { ButtonLink } from '#client/components/button.tsx';
+import { ProblemNote } from '#client/components/problem-note.tsx';
 import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
 import { revisionListQuery, revisionQuery } from '#client/features/revisions/api/revision-queries.ts';
 import { DecisionPanel } from '#client/features/revisions/components/decision-panel.tsx';
 import { RecordFacts } from '#client/features/revisions/components/record-facts.tsx';
+import { RevisionChanges } from '#client/features/revisions/components/revision-changes.tsx';
 import { RevisionHistory } from '#client/features/revisions/components/revision-history.tsx';
 import { StayedOpenList } from '#client/features/revisions/components/stayed-open.tsx';
 import { CalculationSheetPanel } from '#client/features/sheets/components/calculation-sheet-panel.tsx';
@@ -25,6 +27,7 @@ import { FrozenSchedule } from './frozen-schedule.tsx';
 import { FrozenTitleBlock } from './frozen-title-block.tsx';
 import { useCheckLive } from './use-check-live.ts';
 import { useFrozenNotes } from './use-frozen-notes.ts';
+import { useRevisionBefore } from './use-revision-before.ts';
 
 const NARROW = '(max-width: 819.98px)';
 
@@ -42,6 +45,7 @@ function Check({ revision }: { revision: RevisionDto }) {
   const store = useFrozenStore(revision);
   const notes = useFrozenNotes(revision, store);
   const history = useQuery(revisionListQuery(payload.netId)).data ?? [summary];
+  const since = useRevisionBefore(revision, history, store);
   useCheckLive(revision);
   const section = sectionLabel(payload.section);
   const drawing = deskPageText.drawingRevision(
@@ -94,6 +98,16 @@ function Check({ revision }: { revision: RevisionDto }) {
           check={
             <>
               <DecisionPanel revision={revision} />
+              <ProblemNote error={since.error} />
+              {since.before && since.comparison ? (
+                <RevisionChanges
+                  comparison={since.comparison}
+                  label={since.before.label}
+                  unitSystem={payload.document.unitSystem}
+                  drawnOver={since.drawnOver}
+                  onDrawnOver={since.setDrawnOver}
+                />
+              ) : null}
               <StayedOpenList stayedOpen={payload.stayedOpen} />
               <RecordFacts revision={revision} />
               <CalculationSheetPanel netId={payload.netId} revisionId={summary.id} />

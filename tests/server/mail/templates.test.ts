@@ -38,6 +38,8 @@ const letters = {
       ],
     },
     hash: 'a1b2c3',
+    dueOn: '2026-12-05',
+    changes: ['2 lines changed.'],
     url: LINK,
   }),
   accepted: decidedMail({
@@ -103,6 +105,8 @@ describe('what people type', () => {
       message: `${nasty}\nsecond line`,
       figures: { heads: [nasty], rows: [[nasty]] },
       hash: 'a1b2c3',
+      dueOn: '2026-12-05',
+      changes: ['2 lines changed.'],
       url: LINK,
     });
     expect(html).not.toContain('<img');

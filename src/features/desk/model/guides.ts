@@ -18,7 +18,8 @@ export type GuideTone =
   | 'below1'
   | 'below2'
   | 'below3'
-  | 'otherHand';
+  | 'otherHand'
+  | 'before';
 
 /** Ground tinted in one tone: closed outlines in base-raster pixels. */
 export type GuideArea = {
@@ -56,6 +57,7 @@ export const GUIDE_OWNERS = [
   'differences',
   'presence',
   'carried',
+  'revisionBefore',
 ] as const;
 export type GuideOwner = (typeof GUIDE_OWNERS)[number];
 

@@ -24,6 +24,7 @@ const TONE_COLOURS: Record<GuideTone, string> = {
   below2: COLOURS.phreatic,
   below3: COLOURS.phreatic,
   otherHand: COLOURS.boundary,
+  before: COLOURS.attention,
 };
 
 const AREA_ALPHAS: Partial<Record<GuideTone, number>> = {
