@@ -146,8 +146,9 @@ function mark(
 
 /** Heads at the lower ends of the equipotentials. */
 function labelItems(lines: readonly SceneLine[], input: SceneInput): SceneMark[] {
+  const read = new Map(input.reading?.lines.map((line) => [line.id, line]));
   return lines.flatMap((line) => {
-    const text = headText(line.id, input);
+    const text = headText(input.document.entities[line.id]?.value, read.get(line.id));
     if (text === null) return [];
     const { strong } = line;
     return [
@@ -166,11 +167,11 @@ function lowerEnd(points: readonly SheetPoint[]): SheetPoint {
 }
 
 /** The head a line carries; before heads are known the drops lost at it; nothing for other kinds of line. */
-function headText(id: string, input: SceneInput): string | null {
-  const value = input.document.entities[id]?.value;
-  if (value?.kind !== 'line' || value.line !== 'equipotential') return null;
-  const read = input.reading?.lines.find((line) => line.id === id);
-  if (read === undefined) return null;
+function headText(
+  value: DocumentEntity | undefined,
+  read: NetReading['lines'][number] | undefined,
+): string | null {
+  if (value?.kind !== 'line' || value.line !== 'equipotential' || read === undefined) return null;
   if (read.head !== null) return withoutTrailingZeros(fixedText(read.head, 2));
   return read.drops === null ? null : plainText(read.drops, 3);
 }
