@@ -31,6 +31,8 @@ export const damDto = z.object({
   can: z.array(damAction),
   drawingCount: z.number(),
   openNoteCount: z.number(),
+  /** Notes in which others wrote what the reader has not seen; none for who has no part on the dam. */
+  unreadNoteCount: z.number(),
 });
 export type DamDto = z.infer<typeof damDto>;
 export const damListDto = z.object({ items: z.array(damDto) });

@@ -40,6 +40,7 @@ const en = {
       ? 'You have no part on this dam.'
       : `You are ${roles.map((role) => withArticle(ROLE_NAMES[role])).join(' and ')} on this dam.`,
   drawingCount: (count: number) => plural(count, 'drawing', 'drawings'),
+  unreadNoteCount: (count: number) => `${count} new to you`,
   openNoteCount: (count: number) => `${plural(count, 'note', 'notes')} open`,
   levelUnset: 'not entered',
   siUnits: 'SI units',

@@ -46,6 +46,7 @@ describe('a dam', () => {
       roles: [],
       drawingCount: 0,
       openNoteCount: 0,
+      unreadNoteCount: 0,
     });
     expect(body.can).toContain('dam.edit');
     expect(body.can).not.toContain('net.trace');

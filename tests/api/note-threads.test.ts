@@ -239,11 +239,14 @@ describe('what is unread', () => {
     await tove.caller.post(`/notes/${note.id}/answers`, { id: uuidv7(), text: 'Second' }).expect(201);
     expect((await listOf(caller, netId))[0]?.unread).toBe(2);
     expect((await listOf(tove.caller, netId))[0]?.unread).toBe(0);
+    const newOnDam = async (by: Caller) => (await by.get(`/dams/${damId}`).expect(200)).body.unreadNoteCount;
+    expect([await newOnDam(caller), await newOnDam(tove.caller)]).toEqual([1, 0]);
     app.live.published.length = 0;
     await caller.put(`/notes/${note.id}/read`, { entries: 1 }).expect(200);
     expect(app.live.published).toEqual([{ type: 'notesRead', personId: engineer.id, netId }]);
     expect((await listOf(caller, netId))[0]?.unread).toBe(1);
     await caller.put(`/notes/${note.id}/read`, { entries: 99 }).expect(200);
+    expect(await newOnDam(caller)).toBe(0);
     // A late report from another window takes nothing back.
     await caller.put(`/notes/${note.id}/read`, { entries: 1 }).expect(200);
     expect((await listOf(caller, netId))[0]?.unread).toBe(0);

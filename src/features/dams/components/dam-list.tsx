@@ -53,6 +53,7 @@ function DamRow({ dam }: { dam: DamDto }) {
       <Cell numeric>{dam.drawingCount}</Cell>
       <Cell className={dam.openNoteCount > 0 ? 'font-semibold text-attention' : 'text-ink-2'}>
         {dam.openNoteCount > 0 ? text.openNoteCount(dam.openNoteCount) : '–'}
+        {dam.unreadNoteCount > 0 ? `, ${text.unreadNoteCount(dam.unreadNoteCount)}` : ''}
       </Cell>
       <Cell className="text-ink-2 max-sm:hidden">{text.roles(dam.roles) || '–'}</Cell>
     </tr>
