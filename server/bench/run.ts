@@ -1,10 +1,12 @@
 import { writeFileSync } from 'node:fs';
 import { parseArgs } from 'node:util';
+import { archive } from './archive-bench.ts';
 import type { Bench, BenchRow } from './bench.ts';
 import { firstLoad } from './first-load.ts';
 import { firstView } from './first-view-bench.ts';
 import { independentSolution } from './independent-bench.ts';
 import { inkFollow } from './ink-follow.ts';
+import { noteLatency } from './note-latency.ts';
 import { pageMemory } from './page-memory.ts';
 import { panFrame } from './pan-frame.ts';
 import { dragVertex, panFrameE600 } from './pan-frame-e600.ts';
@@ -29,6 +31,7 @@ const benches: readonly Bench[] = [
   pageMemory,
   firstLoad,
   scheduleApi,
+  noteLatency,
   independentSolution,
   reread200,
   wholeNet60,
@@ -36,6 +39,7 @@ const benches: readonly Bench[] = [
   readingError,
   inkFollow,
   sheetPdf,
+  archive,
 ];
 
 const { values: options } = parseArgs({

@@ -1,4 +1,5 @@
 import type { RouteRecord } from '#server/http/route-record.ts';
+import { archiveRoutes } from './archive-routes.ts';
 import { calculationSheetRoutes } from './calculation-sheet-routes.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
@@ -25,6 +26,7 @@ export const routes: readonly RouteRecord[] = [
   ...peopleRoutes,
   ...damRoutes,
   ...damSeepageRoutes,
+  ...archiveRoutes,
   ...waitingRoutes,
   ...liveRoutes,
   ...mailRoutes,

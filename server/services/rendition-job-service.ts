@@ -1,4 +1,5 @@
-import { SheetEntity } from '#server/entities/drawing-entity.ts';
+import { In } from 'typeorm';
+import { RenderJobEntity, SheetEntity } from '#server/entities/drawing-entity.ts';
 import { RenditionEntity } from '#server/entities/rendition-entity.ts';
 import { placeOfSheet, type SheetPlace } from './net-place.ts';
 import { LEASE_MS, MOST_ATTEMPTS } from './render-job-service.ts';
@@ -13,6 +14,9 @@ export interface HeldRendition {
   row: RenditionEntity;
   place: SheetPlace;
 }
+
+/** Until the tiles of the sheet itself are looked for again. */
+const SHEET_WAIT_S = 10;
 
 type MadeTiles = Pick<RenditionEntity, 'tileSizePx' | 'maxZoom' | 'tileFormat'>;
 const waiting = { state: 'waiting', runId: null, leaseUntil: null, progress: 0 } as const;
@@ -49,6 +53,11 @@ export function createRenditionJobService({
       'The server could not make this picture. Tell the administrator, who finds the reason in the log.',
     );
 
+  /** After a restore the sheet's own tiles, of which the picture is made, may still be under way. */
+  const isBeingDrawn = async ({ sheet, drawing }: SheetPlace) =>
+    sheet.readyZoom !== null &&
+    manager.existsBy(RenderJobEntity, { drawingId: drawing.id, state: In(['waiting', 'running']) });
+
   return {
     /** Takes the rendition when it waits or when the run that held it shows no sign of life; null when there is nothing to do. */
     async claim(id: string, runId: string): Promise<HeldRendition | null> {
@@ -58,8 +67,13 @@ export function createRenditionJobService({
       });
       const isDead = row?.state === 'running' && (row.leaseUntil?.getTime() ?? 0) < clock.now().getTime();
       if (!row || (row.state !== 'waiting' && !isDead)) return null;
+      const place = await placeOfSheet(manager, row.sheetId);
+      if (await isBeingDrawn(place)) {
+        await jobs.enqueue(manager, 'make-rendition', id, SHEET_WAIT_S);
+        return null;
+      }
       const attempts = row.attempts + 1;
-      const held = { id, runId, attempts, row, place: await placeOfSheet(manager, row.sheetId) };
+      const held = { id, runId, attempts, row, place };
       await manager.update(
         RenditionEntity,
         { id },
@@ -85,7 +99,8 @@ export function createRenditionJobService({
       await manager.findOne(SheetEntity, { where: { id: sheetId }, lock: { mode: 'pessimistic_write' } });
       const done = { ...tiles, state: 'done', progress: 1, runId: null, leaseUntil: null } as const;
       if (!(await update(held, { ...done, finishedAt: clock.now() }))) return;
-      await showRendition(manager, sheetId, held.id);
+      // One that had been made before, as in an archive, does not push the shown one aside.
+      if (held.row.maxZoom === null) await showRendition(manager, sheetId, held.id);
       await announce(held);
     },
 

@@ -13,7 +13,7 @@ import { runCommand } from './run-command.mjs';
  * Runs one script of server/scripts with the database open, whether the product is running or not:
  * node server/start/with-database.mjs create-admin
  */
-const SCRIPTS = ['migrate', 'revert', 'seed', 'create-admin'];
+const SCRIPTS = ['migrate', 'revert', 'seed', 'create-admin', 'restore-dam'];
 const storageDir = storageDirOf(process.env);
 
 await live(storageDir, async (life) => {

@@ -6,6 +6,7 @@ import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { Part } from '#client/components/part.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
+import { ArchivePanel } from '#client/features/archive/components/archive-panel.tsx';
 import { useArchiveDam, useEditDam } from '#client/features/dams/api/dam-mutations.ts';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
 import { DamFacts } from '#client/features/dams/components/dam-facts.tsx';
@@ -54,6 +55,7 @@ export function DamSettingsPage() {
           </div>
           <div className="flex flex-col gap-4">
             <FactsPanel dam={dam} />
+            {dam.can.includes('dam.archive') ? <ArchivePanel damId={dam.id} /> : null}
             {dam.can.includes('dam.archive') ? <PutAwayPanel dam={dam} /> : null}
           </div>
         </div>
