@@ -10,6 +10,8 @@ import { cloneDatabase } from './test-database.ts';
 export interface RealServer {
   address: string;
   storageDir: string;
+  /** What the server was started with, for scripts that work on the same database and storage. */
+  env: NodeJS.ProcessEnv;
   /** A connection of the owner, to prepare and to look. */
   db: DataSource;
   /** Stops the process and starts another on the same database, storage and port. */
@@ -47,6 +49,7 @@ export async function startRealServer(env: Record<string, string> = {}): Promise
   return {
     address: server.address,
     storageDir,
+    env: serverEnv,
     db,
     async restart() {
       await server.stop();

@@ -22,6 +22,12 @@ export const place = (x: number, elevation: number): SheetPoint => [
   GROUND_PX[1] + (GROUND - elevation) * PX_PER_M,
 ];
 
+/** The other way: offset and elevation of a pixel. */
+export const sectionOf = ([x, y]: SheetPoint): [number, number] => [
+  (x - GROUND_PX[0]) / PX_PER_M,
+  GROUND - (y - GROUND_PX[1]) / PX_PER_M,
+];
+
 const node = (drop: number, channel: number): SheetPoint => {
   const [x, depth] = flatApronPoint(floor, floor.H * (1 - drop / DROPS), (channel * Math.PI) / DROPS);
   return place(x, GROUND - depth);
