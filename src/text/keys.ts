@@ -17,6 +17,7 @@ const DOES = {
   previousPart: 'Go to the part before',
   linesTable: 'Lines and points as a table',
   listLines: 'What is on the sheet by kind: hide and lock',
+  nextOpenNote: 'Go to the next open note',
   tellPlace: 'Tell what stands at the crosshair or the pointer',
   waterLevels: 'Water levels',
   knownPoint: 'Known points',

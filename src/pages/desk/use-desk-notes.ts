@@ -1,12 +1,11 @@
 import { useQuery } from '@tanstack/react-query';
-import { useEffect, useMemo, useState } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import { useLocation } from 'react-router-dom';
 import { useStore } from 'zustand';
 import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
 import { isAnchorGone, placeOfNote } from '#client/features/desk/model/note-places.ts';
 import type { NoteBalloon } from '#client/features/desk/render/build-scene.ts';
 import { notesQuery } from '#client/features/notes/api/note-queries.ts';
-import { useNextOpenKey } from '#client/features/notes/hooks/use-next-open-key.ts';
 import { nextOpenNote } from '#client/features/notes/model/note-filter.ts';
 import { notesText } from '#client/text/notes.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
@@ -39,7 +38,7 @@ export function useDeskNotes(netId: string, store: DeskStore) {
     // Brings the notes to the front, whatever stands in their place.
     store.emitIntent({ type: 'openNote', noteId: next.id });
   };
-  useNextOpenKey(nextOpen);
+  useNextOpenKey(store, nextOpen);
   useNoteOfAddress(data, choose);
   return {
     notes,
@@ -54,6 +53,21 @@ export function useDeskNotes(netId: string, store: DeskStore) {
     choose,
     nextOpen,
   };
+}
+
+/** The key of the desk asks for the next open note. */
+function useNextOpenKey(store: DeskStore, nextOpen: () => void): void {
+  const newest = useRef(nextOpen);
+  useEffect(() => {
+    newest.current = nextOpen;
+  });
+  useEffect(
+    () =>
+      store.onIntent((intent) => {
+        if (intent.type === 'nextOpenNote') newest.current();
+      }),
+    [store],
+  );
 }
 
 /** Chooses the note that the address names, as the link in a mail does, once the notes are there. */

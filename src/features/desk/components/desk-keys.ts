@@ -72,6 +72,7 @@ const DESK_BINDINGS: readonly KeyBinding<DeskTarget>[] = [
   intent('crosshair', 'crosshair', { type: 'crosshair', wants: 'toggle' }, { key: 'c' }),
   intent('typePlace', 'crosshair', { type: 'crosshair', wants: 'place' }, { key: 'c', shift: true }),
   intent('tellPlace', 'crosshair', { type: 'tellPlace' }, { key: 'q' }),
+  intent('nextOpenNote', 'about', { type: 'nextOpenNote' }, { key: '.' }),
   intent('waterLevels', 'tools', { type: 'openWaterLevels' }, { key: WATER_KEY }),
   ...Object.entries(TOOL_KEYS).map(
     ([key, tool]): KeyBinding<DeskTarget> => ({

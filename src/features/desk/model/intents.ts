@@ -4,6 +4,7 @@ import type { NoteAnchor } from '#shared/contract/notes.ts';
 export type DeskIntent =
   | { type: 'writeNote'; anchor: NoteAnchor }
   | { type: 'openNote'; noteId: string }
+  | { type: 'nextOpenNote' }
   | { type: 'openKnownPoint'; id: string }
   | { type: 'openReadingPoint'; id: string }
   | { type: 'openMeasured'; id: string }
