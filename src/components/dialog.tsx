@@ -13,10 +13,17 @@ interface DialogProps {
 /** A modal dialog of the browser's own: it holds the focus, gives it back, and Escape closes it. Shown while mounted. */
 export function Dialog({ title, onClose, children, wide = false, full = false }: DialogProps) {
   const ref = useRef<HTMLDialogElement>(null);
+  const heading = useRef<HTMLHeadingElement>(null);
   const titleId = useId();
   useEffect(() => {
     const dialog = ref.current;
     if (dialog && !dialog.open) dialog.showModal();
+    // Where the first control lies below what fits, as under a long list, reading begins at the title.
+    if (dialog && heading.current && dialog.scrollTop > 0) {
+      // Only now: earlier the browser would take the title for the first control of every dialog.
+      heading.current.tabIndex = -1;
+      heading.current.focus();
+    }
     return () => dialog?.close();
   }, []);
   return (
@@ -32,7 +39,7 @@ export function Dialog({ title, onClose, children, wide = false, full = false }:
         full ? 'max-w-[1240px]' : wide ? 'max-w-[860px]' : 'max-w-[480px]'
       }`}
     >
-      <h2 id={titleId} className="m-0 border-b border-rule px-4 py-2.5 text-md font-bold">
+      <h2 ref={heading} id={titleId} className="m-0 border-b border-rule px-4 py-2.5 text-md font-bold">
         {title}
       </h2>
       <div className="p-4">{children}</div>

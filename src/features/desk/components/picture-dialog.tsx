@@ -5,7 +5,7 @@ import { Actions, Dialog } from '#client/components/dialog.tsx';
 import { NumberField, SelectField } from '#client/components/field.tsx';
 import { ProgressBar } from '#client/components/progress-bar.tsx';
 import { downloadBlob } from '#client/lib/download.ts';
-import { fixedText } from '#client/lib/figures.ts';
+import { fixedText, plainText } from '#client/lib/figures.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
 import { commonText } from '#client/text/common.ts';
 import { pictureText as text } from '#client/text/picture.ts';
@@ -142,7 +142,7 @@ function ScaleField({ plan, value, onChange }: ScaleFieldProps) {
   const fits = plan?.fits ?? null;
   return (
     <SelectField label={text.scale} value={value} onChange={(event) => onChange(event.target.value)}>
-      <option value="">{text.fits(fits === null ? null : scaleFigure(fits))}</option>
+      <option value="">{text.fits(fits === null ? null : plainText(fits, 3))}</option>
       {plan?.scales.map((n) => (
         <option key={n} value={n}>
           {text.scaleOf(scaleFigure(n))}

@@ -143,7 +143,7 @@ function Content({ cell }: { cell: TitleCell }) {
   const weight = LIGHT.includes(cell.id) ? '' : 'font-semibold';
   return (
     <>
-      <span className="block text-[0.72rem] leading-[1.25] text-ink-2">
+      <span className="block text-[0.72rem] leading-[1.25] text-ink-2 [overflow-wrap:normal]">
         {cell.label}
         {cell.state === 'ok' || cell.said ? null : (
           <span className={FACT_COLOURS[cell.state]}> · {text.state[cell.state]}</span>
