@@ -94,25 +94,32 @@ export function PaneSeparator(props: PaneSeparatorProps) {
         title={props.foldLabel}
         aria-expanded={!folded}
         aria-controls={props.paneId}
+        // The mark is narrow, what is pressed is not.
         className={classNames(
-          'absolute flex items-center justify-center rounded-sheet border border-rule bg-film p-0 text-ink-2 hover:border-ink hover:text-ink',
-          along ? 'left-1/2 h-[15px] w-9 -translate-x-1/2' : 'top-1/2 h-9 w-[15px] -translate-y-1/2',
-          along ? (folded ? 'bottom-1/2' : '-top-[3px]') : null,
+          'group absolute flex border-0 bg-transparent p-0',
+          along ? 'left-1/2 h-6 w-9 -translate-x-1/2' : 'top-1/2 h-9 w-6 -translate-y-1/2',
+          along ? (folded ? 'bottom-1/2 items-end' : '-top-[3px] items-start') : null,
           side === 'left' && (folded ? 'left-1/2' : '-left-[3px]'),
-          side === 'right' && (folded ? 'right-1/2' : '-right-[3px]'),
-          'pointer-coarse:min-h-6 pointer-coarse:min-w-6',
+          side === 'right' && (folded ? 'right-1/2 justify-end' : '-right-[3px] justify-end'),
         )}
         onClick={props.onFold}
       >
-        <svg
-          width="9"
-          height="9"
-          viewBox="0 0 9 9"
-          aria-hidden="true"
-          className={TURNS[side][Number(folded)]}
+        <span
+          className={classNames(
+            'flex items-center justify-center rounded-sheet border border-rule bg-film text-ink-2 group-hover:border-ink group-hover:text-ink',
+            along ? 'h-[15px] w-9' : 'h-9 w-[15px]',
+          )}
         >
-          <path d="M1.5 3 4.5 6 7.5 3" fill="none" stroke="currentColor" strokeWidth="1.4" />
-        </svg>
+          <svg
+            width="9"
+            height="9"
+            viewBox="0 0 9 9"
+            aria-hidden="true"
+            className={TURNS[side][Number(folded)]}
+          >
+            <path d="M1.5 3 4.5 6 7.5 3" fill="none" stroke="currentColor" strokeWidth="1.4" />
+          </svg>
+        </span>
       </button>
     </div>
   );
