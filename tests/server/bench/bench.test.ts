@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { median, percentile, repeated, rowOf } from '#server/bench/bench.ts';
 import { peakOfTree } from '#server/bench/process-tree.ts';
 import { tableOf } from '#server/bench/table.ts';
-import { mainThreadFrames, type TraceEvent } from '#server/bench/trace-frames.ts';
+import { mainThreadFrames, mainThreadOf, type TraceEvent } from '#server/bench/trace-frames.ts';
 
 describe('percentiles', () => {
   it('are refused without values', () => {
@@ -68,6 +68,7 @@ it("a frame's main-thread time is that of the tasks until the next frame, on the
   const events = [named(1), named(2), frame(2, 0), frame(1, 0), frame(1, 16_000), frame(1, 32_000)];
   const tasks = [task(1, 100, 3000), task(1, 9000, 2000), task(1, 17_000, 500), task(2, 100, 9000)];
   expect(mainThreadFrames([...events, ...tasks])).toEqual([5, 0.5]);
+  expect(mainThreadOf([...events, ...tasks])).toEqual({ work: [5, 0.5], every: [16, 16], longestTask: 3 });
 });
 
 it('the peak of memory includes what a child took and gave back', async () => {
