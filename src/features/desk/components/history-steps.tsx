@@ -24,7 +24,7 @@ export function HistorySteps({ store, from, keeping }: HistoryStepsProps) {
       label={back ? text.undoSteps : text.redoSteps}
       listLabel={back ? text.undoList : text.redoList}
       button={<Chevron />}
-      buttonClassName="border-0 bg-transparent px-1.5 py-1.5 text-ink-2 hover:bg-hover disabled:opacity-55 touch"
+      buttonClassName="border-0 bg-transparent px-2 py-1.5 text-ink-2 hover:bg-hover disabled:opacity-55 touch"
       disabled={steps.length === 0}
       listClassName="w-[300px]"
     >

@@ -1,7 +1,7 @@
 import { Fragment, useEffect, useState } from 'react';
 import { createPortal } from 'react-dom';
 import { Button } from '#client/components/button.tsx';
-import { Actions, Dialog } from '#client/components/dialog.tsx';
+import { Dialog } from '#client/components/dialog.tsx';
 import { type KeyGroup, keysText as text } from '#client/text/keys.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { ALL_KEYS } from './desk-keys.ts';
@@ -16,15 +16,18 @@ export function KeyListDialog({ store }: { store: DeskStore }) {
   const close = () => setOpen(false);
   return createPortal(
     <Dialog title={text.title} wide onClose={close}>
-      <p className="mt-0 mb-3 text-ink-2">{text.lead}</p>
+      {/* The way out comes first: the dialog begins where the focus is. */}
+      <div className="mb-3 flex items-start gap-4">
+        <p className="m-0 text-ink-2">{text.lead}</p>
+        <Button className="ml-auto shrink-0" onClick={close}>
+          {text.close}
+        </Button>
+      </div>
       <div className="gap-x-8 md:columns-2">
         {(Object.keys(text.groups) as KeyGroup[]).map((group) => (
           <KeyTable key={group} group={group} />
         ))}
       </div>
-      <Actions>
-        <Button onClick={close}>{text.close}</Button>
-      </Actions>
     </Dialog>,
     document.body,
   );
@@ -53,15 +56,15 @@ function KeyTable({ group }: { group: KeyGroup }) {
 
 function Presses({ presses }: { presses: readonly KeyPress[] }) {
   return keyWords(presses).map((keys, index) => (
-    <Fragment key={keys.join(' ')}>
-      {index === 0 ? null : ` ${text.or} `}
+    <span key={keys.join(' ')} className="block">
+      {index === 0 ? null : `${text.or} `}
       {keys.map((key, place) => (
         <Fragment key={key}>
           {place === 0 ? null : ' + '}
           <kbd className="rounded-sheet border border-edge px-1 font-sans text-sm">{key}</kbd>
         </Fragment>
       ))}
-    </Fragment>
+    </span>
   ));
 }
 

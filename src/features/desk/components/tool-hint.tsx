@@ -16,7 +16,7 @@ export function ToolHint({ store }: { store: DeskStore }) {
   const way = useStore(drawingWayChoice, (choice) => choice.way);
   const sentences = useStore(store, (state) => hintOf(state, clickedPlacesOf(store), way));
   return (
-    <div role="status" className="mx-4 mt-3 min-h-[92px] text-sm text-ink-2">
+    <div role="status" className="mx-4 mt-3 min-h-[92px] shrink-0 text-sm text-ink-2">
       {sentences.split('\n').map((sentence) => (
         <p key={sentence} className="m-0 mb-1.5">
           {sentence}
