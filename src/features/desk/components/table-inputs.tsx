@@ -6,6 +6,9 @@ import { useTypedText } from './use-typed-text.ts';
 const IN_TABLE =
   'w-full min-w-[64px] rounded-sheet border bg-transparent px-1.5 py-px hover:border-edge focus:border-edge focus:bg-white';
 
+/** An empty field shows where it is. */
+const edgeOf = (shown: string) => (shown === '' ? 'border-edge' : 'border-transparent');
+
 interface TableNumberProps {
   label: string;
   value: number | null;
@@ -35,11 +38,7 @@ export function TableNumber({
         aria-label={label}
         aria-invalid={error ? true : undefined}
         disabled={disabled}
-        className={classNames(
-          IN_TABLE,
-          '-mr-[7px] text-right',
-          error ? 'border-wrong' : 'border-transparent',
-        )}
+        className={classNames(IN_TABLE, '-mr-[7px] text-right', error ? 'border-wrong' : edgeOf(shown))}
         {...input}
       />
       {error ? (
@@ -70,7 +69,7 @@ export function TableText({
       spellCheck={false}
       aria-label={label}
       maxLength={maxLength}
-      className={classNames(IN_TABLE, '-ml-[7px] border-transparent font-semibold')}
+      className={classNames(IN_TABLE, edgeOf(value), '-ml-[7px] font-semibold')}
       {...input}
     />
   );
