@@ -75,7 +75,7 @@ async function tiledA1(
     mkdirSync(root);
     const storage = createLocalDiskStorage(root);
     await storage.putTree(tilePrefix(SHEET_ID, 'base'), outFolder);
-    return { storage, sheet: { ...sheet, id: SHEET_ID, rendition: 'base' } };
+    return { storage, sheet: { ...sheet, id: SHEET_ID, rendition: 'base', readyZoom: null } };
   } finally {
     renderer.close();
   }

@@ -6,7 +6,7 @@ import type { StoragePort } from '#server/storage/storage-port.ts';
 
 type TiledSheet = Pick<
   SheetEntity,
-  'id' | 'rendition' | 'tileSizePx' | 'maxZoom' | 'tileFormat' | 'widthPx' | 'heightPx'
+  'id' | 'rendition' | 'tileSizePx' | 'maxZoom' | 'readyZoom' | 'tileFormat' | 'widthPx' | 'heightPx'
 >;
 
 /** Dots per inch on paper beyond which a print does not get better. */
@@ -34,7 +34,8 @@ export async function scanPicture(
   signal: AbortSignal,
 ): Promise<Buffer> {
   const wantedPx = Math.max(1, Math.round((widthPt / PT_PER_INCH) * PRINT_DPI));
-  const zoom = zoomFor(sheet.maxZoom, crop[2], wantedPx);
+  // Of a sheet whose rest is being drawn, or could not be, there are coarse levels only.
+  const zoom = Math.min(zoomFor(sheet.maxZoom, crop[2], wantedPx), sheet.readyZoom ?? sheet.maxZoom);
   const raster = await rasterOf(storage, sheet, crop, zoom, signal);
   const image = sharp(raster.data, { raw: { width: raster.width, height: raster.height, channels: 1 } });
   if (raster.width > wantedPx) image.resize({ width: wantedPx });

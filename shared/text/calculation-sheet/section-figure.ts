@@ -33,7 +33,7 @@ export interface SectionFigure {
   profiles: ReadonlyArray<readonly SheetPoint[]>;
   points: readonly FigurePoint[];
   knownPoints: readonly FigurePoint[];
-  /** Along the level, and upwards where the drawing has two scales. None before the section is set out. */
+  /** Along the level, and upwards where the drawing has two scales. None before the section is set out, nor on a photograph. */
   scaleBars: readonly ScaleBar[];
   /** Which way the water flows on the sheet; null when the net does not tell. */
   flow: 'left' | 'right' | null;
@@ -107,7 +107,9 @@ function within({ low, high, most }: { low: number; high: number; most: number }
 
 function scaleBars(document: FlowNetDocument, { setOut }: NetReading, widthPx: number): ScaleBar[] {
   const { unitsPerPx, unitsPerPxUp } = setOut;
-  if (unitsPerPx === null) return [];
+  // On a photograph taken aslant no length is the same in two places.
+  const hasScale = singleOf(document, 'setOut')?.value.scales !== 'perspective';
+  if (unitsPerPx === null || !hasScale) return [];
   const { length } = unitNames(document.unitSystem);
   const bar = (scale: number, words: string): ScaleBar => {
     const units = roundLength((widthPx / 5) * scale);

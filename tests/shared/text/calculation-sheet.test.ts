@@ -9,7 +9,7 @@ import { notesUntil } from '#shared/text/calculation-sheet/record.ts';
 import { lowered, powerText, raised, richRuns } from '#shared/text/calculation-sheet/rich-text.ts';
 import { sectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
 import { titleBlock } from '#shared/text/calculation-sheet/title-block.ts';
-import { withLines } from '#tests/support/exact-nets/edit-net.ts';
+import { changed, withLines } from '#tests/support/exact-nets/edit-net.ts';
 import { exactNetDocument } from '#tests/support/exact-nets/exact-net-document.ts';
 import { EXACT_NETS } from '#tests/support/exact-nets/exact-nets.ts';
 
@@ -79,6 +79,13 @@ describe('the figure of the section', () => {
     expect(others).toEqual([]);
     // The document is drawn at so many pixels to the metre.
     expect(bar!.lengthPx / Number.parseFloat(bar!.label)).toBeCloseTo(pxPerUnit, 3);
+  });
+
+  it('has no bar on a photograph, where no length is the same in two places', () => {
+    const { document } = turn(false);
+    const reading = readNet(document);
+    const aslant = changed(document, 'setOut', (value) => ({ ...value, scales: 'perspective' as const }));
+    expect(sectionFigure(aslant, reading)!.scaleBars).toEqual([]);
   });
 
   it('turns the direction of flow with the drawing', () => {
