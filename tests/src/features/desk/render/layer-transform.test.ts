@@ -47,7 +47,7 @@ describe('the transform of the tiles’ layer', () => {
       const transform = layerTransform(now, raster, 1, laidOutAt);
       for (const place of [sheetPx(10, 20), sheetPx(640, 310)]) {
         const [x, y] = toScreen(now, place);
-        const onRaster = fromBase === null ? place : throughPlane(fromBase, ...place);
+        const onRaster = fromBase === null ? place : throughPlane(fromBase, place[0], place[1]);
         const [left, top] = placed(transform, onRaster[0] * laidOutAt, onRaster[1] * laidOutAt);
         expect(Math.hypot(left - x, top - y)).toBeLessThan(1);
       }
