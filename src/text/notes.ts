@@ -85,6 +85,8 @@ const en = {
   showFilter: 'Filter and search',
   hideFilter: 'No filter',
   noneShown: 'All notes are closed.',
+  showClosed: (count: number) => `Show closed notes (${count})`,
+  hideClosed: 'Hide closed notes',
   filter: 'Show',
   search: 'Search the notes',
   nextOpen: 'Next open note',

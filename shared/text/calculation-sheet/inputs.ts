@@ -155,8 +155,8 @@ function setOutFacts(document: FlowNetDocument, { setOut }: NetReading): SheetFa
     equal: 'one scale',
     plottingExaggeration: 'drawn with exaggeration, which is taken out',
     transformedSection: 'drawn as a transformed section',
-  stretchedPaper: 'one scale, the paper’s stretch taken out',
-  perspective: 'one scale, the perspective of the photograph taken out',
+    stretchedPaper: 'one scale, the paper’s stretch taken out',
+    perspective: 'one scale, the perspective of the photograph taken out',
   } as const;
   return [
     {

@@ -1,6 +1,6 @@
 import { readFile } from 'node:fs/promises';
 import type { CDPSession, Page } from 'playwright-core';
-import sharp from 'sharp';
+import sharp, { type OutputInfo } from 'sharp';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { entitiesOf } from '#shared/contract/document.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
@@ -128,10 +128,7 @@ describe('with a pen', () => {
 });
 
 /** Longest run of ink that begins at a column, over all rows of a picture. */
-function longestRunFrom(
-  column: number,
-  { data, info }: { data: Buffer; info: sharp.OutputInfo },
-): Set<number> {
+function longestRunFrom(column: number, { data, info }: { data: Buffer; info: OutputInfo }): Set<number> {
   const runs = new Set<number>();
   const isInk = (x: number, y: number) => {
     const i = (y * info.width + x) * info.channels;
@@ -147,7 +144,7 @@ function longestRunFrom(
 }
 
 /** How many pixels have about a colour. */
-function countOf(colour: number, { data, info }: { data: Buffer; info: sharp.OutputInfo }): number {
+function countOf(colour: number, { data, info }: { data: Buffer; info: OutputInfo }): number {
   const [r, g, b] = [colour >> 16, (colour >> 8) & 255, colour & 255];
   let count = 0;
   for (let i = 0; i < data.length; i += info.channels) {

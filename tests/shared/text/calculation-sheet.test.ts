@@ -33,6 +33,8 @@ describe('texts with raised and lowered runs', () => {
 
 describe('notes up to a moment', () => {
   const person = { id: '01890000-0000-7000-8000-000000000001', name: 'Tove Lind' };
+  /** An entry that names nobody, has no file and was never changed. */
+  const PLAIN = { editedAt: null, named: [], files: [] };
   const note: NoteDto = {
     id: '01890000-0000-7000-8000-000000000002',
     netId: '01890000-0000-7000-8000-000000000003',
@@ -42,9 +44,12 @@ describe('notes up to a moment', () => {
     createdAt: '2026-01-01T00:00:00.000Z',
     closedBy: person,
     closedAt: '2026-01-04T00:00:00.000Z',
+    answered: null,
+    mustAnswer: null,
+    unread: 0,
     entries: [
-      { id: 'a', author: person, text: 'Why?', at: '2026-01-01T00:00:00.000Z' },
-      { id: 'b', author: person, text: 'So.', at: '2026-01-03T00:00:00.000Z' },
+      { id: 'a', author: person, text: 'Why?', at: '2026-01-01T00:00:00.000Z', ...PLAIN },
+      { id: 'b', author: person, text: 'So.', at: '2026-01-03T00:00:00.000Z', ...PLAIN },
     ],
   };
 
