@@ -178,6 +178,7 @@ describe('a section seen otherwise than drawn', () => {
   it('stands on a phone too, table and switch', async () => {
     await page.setViewportSize(PHONE);
     await page.getByRole('button', { name: 'Sheet', exact: true }).click();
+    await sheet.getByRole('button', { name: 'More', exact: true }).click();
     await page.getByRole('button', { name: 'Transformed', exact: true }).waitFor();
     const over = await page.evaluate(() => document.documentElement.scrollWidth - innerWidth);
     expect(over).toBeLessThanOrEqual(0);

@@ -142,6 +142,8 @@ describe('a section', () => {
     await page.getByRole('button', { name: 'New net for Section B–B, chainage 212' }).click();
     await page.getByRole('button', { name: 'Make the net and open the desk' }).click();
     await page.waitForURL(/\/nets\//);
+    // The address changes before the desk's parts are there.
+    await page.getByRole('application').waitFor();
     await page.goBack();
   });
 

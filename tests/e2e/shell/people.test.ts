@@ -233,7 +233,7 @@ describe('people', () => {
     expect(await page.getByLabel('Unit weight of water').inputValue()).toBe('62.4');
     await page.getByLabel('Full supply level').fill('1,234');
     await page.getByRole('button', { name: 'Make the dam' }).click();
-    await page.getByText('This cannot be read as one number').waitFor();
+    await page.getByText('1,234 may be 1234 or a decimal').waitFor();
     await page.getByLabel('Full supply level').fill('387,5');
     await page.getByRole('button', { name: 'Make the dam' }).click();
     await page.getByRole('heading', { name: 'Settings and people' }).waitFor();

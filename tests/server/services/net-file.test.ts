@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { parseNetFile } from '#server/services/net-file.ts';
+import { FLOW_NET_VERSION } from '#shared/contract/document.ts';
 import { upgradeDocument } from '#shared/contract/document-versions.ts';
 import { FIRST_DOCUMENT_TEXT, firstDocument } from '#tests/support/first-version/first-version.ts';
 import { finishedDocument } from '#tests/support/net-fixture.ts';
@@ -22,8 +23,9 @@ describe('the text of a net file', () => {
     expect(faultsOf(text.replace('tracehead/flow-net', 'other')).map(({ field }) => field)).toEqual([
       'format',
     ]);
-    const later = faultsOf(text.replace('"version": 2', '"version": 3'));
-    expect(later).toMatchObject([{ line: lineWith(text, '"version": 2'), field: 'version' }]);
+    const version = `"version": ${FLOW_NET_VERSION}`;
+    const later = faultsOf(text.replace(version, `"version": ${FLOW_NET_VERSION + 1}`));
+    expect(later).toMatchObject([{ line: lineWith(text, version), field: 'version' }]);
   });
 
   it('has each fault told with its line and field', () => {
