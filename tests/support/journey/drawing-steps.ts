@@ -12,6 +12,8 @@ export async function addDrawings(page: Page, files: UploadedFile[]): Promise<vo
   for (const { name } of files) {
     const entry = page.getByRole('listitem').filter({ has: page.getByRole('heading', { name }) });
     await entry.getByText('No section framed yet').waitFor({ timeout: 60_000 });
+    // The first sheets are there while others are still made.
+    await entry.getByText(/^Preparing/).waitFor({ state: 'detached', timeout: 60_000 });
   }
 }
 
