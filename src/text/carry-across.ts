@@ -9,7 +9,6 @@ const en = {
   fromSheet: (drawing: string) => `From: ${drawing}`,
   toSheet: (drawing: string) => `To: ${drawing}`,
   chooseDrawing: 'Drawing to carry to',
-  chooseSheet: 'Sheet',
   sheetNumber: (page: number) => `Sheet ${page}`,
   noneChosen: 'Choose the drawing',
   noOther:
@@ -24,7 +23,6 @@ const en = {
   onOld: 'Old sheet x, y, px',
   onNew: 'New sheet x, y, px',
   residual: 'Residual, px',
-  residualLength: (unit: string) => `Residual, ${unit}`,
   notYet: 'not yet',
   remove: (name: string) => `Remove ${name}`,
   removeShort: 'Remove',
@@ -43,6 +41,5 @@ const en = {
   sectionName: 'Name of the section there',
   carry: 'Carry across',
   carried: (section: string) => `${section} is on the new sheet.`,
-  markAgain: 'Mark places',
 } as const;
 export const carryAcrossText = inLanguage({ en });
