@@ -6,6 +6,9 @@ export const paths = {
   damSettings: (damId: string) => `/dams/${damId}/settings`,
   damActivity: (damId: string) => `/dams/${damId}/activity`,
   damSeepage: (damId: string) => `/dams/${damId}/seepage`,
+  /** Two nets of a dam beside one another; either may be left to be chosen there. */
+  compare: (damId: string, one?: ComparedSide, other?: ComparedSide) =>
+    `/dams/${damId}/compare${compareQuery(one, other)}`,
   drawing: (drawingId: string, pageNumber?: number) =>
     pageNumber === undefined ? `/drawings/${drawingId}` : `/drawings/${drawingId}?sheet=${pageNumber}`,
   carryAcross: (drawingId: string, sectionId: string) => `/drawings/${drawingId}/carry/${sectionId}`,
@@ -19,6 +22,16 @@ export const paths = {
   signIn: '/sign-in',
   forgotPassword: '/forgot-password',
 } as const;
+
+/** A net as it is drawn now, or as a revision has frozen it. */
+export type ComparedSide = { readonly kind: 'net' | 'revision'; readonly id: string };
+
+function compareQuery(one: ComparedSide | undefined, other: ComparedSide | undefined): string {
+  const query = new URLSearchParams();
+  if (one) query.set('one', `${one.kind}:${one.id}`);
+  if (other) query.set('other', `${other.kind}:${other.id}`);
+  return query.size === 0 ? '' : `?${query}`;
+}
 
 /** Sign-in that comes back to where it was asked for. */
 export function signInAndBack(from: { pathname: string; search: string; hash: string }): string {
