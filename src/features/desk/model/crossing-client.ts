@@ -10,6 +10,11 @@ export type CrossingLook = { readonly about: SheetPx; readonly reach: number; re
 export type CrossingClient = {
   /** Asks about a place: one question is under way at a time, and only the newest waits. */
   look(about: SheetPx, reach: number): void;
+  /**
+   * Asks about a place where something is being set, before any that are only looked at; resolves once that is the
+   * newest question answered, or once it has taken too long to be waited for.
+   */
+  ask(about: SheetPx, reach: number): Promise<void>;
   /** The newest question that was answered; null before the first. */
   newest(): CrossingLook | null;
   onLook(listener: () => void): void;
@@ -17,7 +22,10 @@ export type CrossingClient = {
 };
 
 type CrossingWorker = AskedWorker<CrossingQuestion, CrossingAnswer>;
-type Question = { readonly about: SheetPx; readonly reach: number };
+type Question = { readonly about: SheetPx; readonly reach: number; readonly answered?: () => void };
+
+/** A hand that has clicked waits no longer than this; on a machine at work an answer takes a tenth of it. */
+const PATIENCE_MS = 900;
 
 const START = () =>
   new Worker(new URL('./crossing-worker.ts', import.meta.url), { type: 'module' }) as CrossingWorker;
@@ -27,12 +35,15 @@ export function createCrossingClient(sheet: InkTiles, start: () => CrossingWorke
   let number = 0;
   let asked: Question | null = null;
   let next: Question | null = null;
+  const due: Question[] = [];
   let newest: CrossingLook | null = null;
   let tell = () => {};
 
   function settle(at: SheetPx | null): void {
-    if (asked !== null) newest = { ...asked, at };
+    const question = asked;
+    if (question !== null) newest = { about: question.about, reach: question.reach, at };
     asked = null;
+    question?.answered?.();
     tell();
     askNext();
   }
@@ -52,9 +63,10 @@ export function createCrossingClient(sheet: InkTiles, start: () => CrossingWorke
   }
 
   function askNext(): void {
-    if (asked !== null || next === null) return;
-    asked = next;
-    next = null;
+    if (asked !== null) return;
+    asked = due.shift() ?? next;
+    if (asked === null) return;
+    if (asked === next) next = null;
     worker ??= started();
     number += 1;
     const { id, widthPx, heightPx, tiles } = sheet;
@@ -74,12 +86,27 @@ export function createCrossingClient(sheet: InkTiles, start: () => CrossingWorke
       next = { about, reach };
       askNext();
     },
+    ask(about, reach) {
+      return new Promise((resolve) => {
+        const tooLong = setTimeout(resolve, PATIENCE_MS);
+        due.push({
+          about,
+          reach,
+          answered() {
+            clearTimeout(tooLong);
+            resolve();
+          },
+        });
+        askNext();
+      });
+    },
     newest: () => newest,
     onLook(listener) {
       tell = listener;
     },
     close() {
       next = null;
+      due.length = 0;
       asked = null;
       tell = () => {};
       worker?.terminate();

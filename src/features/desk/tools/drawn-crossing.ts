@@ -19,3 +19,10 @@ export function drawnCrossingAt(at: SheetPx, keys: Modifiers, context: ToolConte
   if (crossing === null || keys.alt || keys.ctrl) return null;
   return Math.hypot(crossing[0] - at[0], crossing[1] - at[1]) <= crossingReach(context) ? crossing : null;
 }
+
+/** True when the newest look was at this very place, so that nothing more is to be known about it. */
+export function isLookedAt(at: SheetPx, { crossingLook, zoom }: ToolContext): boolean {
+  if (crossingLook === null) return false;
+  const { about } = crossingLook;
+  return Math.hypot(about[0] - at[0], about[1] - at[1]) * zoom < 1;
+}

@@ -13,7 +13,8 @@ import { rulerOf } from '../model/ruler.ts';
 import { settingOutAids } from '../model/setting-out-aids.ts';
 import { lineChoiceOf } from '../model/tool-choice.ts';
 import type { ToolOverlay } from '../model/tool-overlay.ts';
-import { crossingReach } from './drawn-crossing.ts';
+import { createCrossingTurn, type SoughtCrossing } from './crossing-turn.ts';
+import { crossingReach, isLookedAt } from './drawn-crossing.ts';
 import { editStep } from './edit-step.ts';
 import { shownLineAt } from './snap-lines.ts';
 import { overlayOf, stepTool } from './tool-set.ts';
@@ -108,9 +109,24 @@ export function createToolHost(
   }
 
   function handle(event: ToolEvent, view: HostView): void {
-    if (turn.holds(event, view)) return;
+    if (turn.holds(event, view) || crossingTurn.holds(event, view)) return;
+    carryOut(event, view);
+  }
+
+  function carryOut(event: ToolEvent, view: HostView): void {
     settle(view);
     take(stepTool(state, event, contextFor(view)), view);
+  }
+
+  /** A known point that is set or let go of goes to the crossing there, which may still have to be found. */
+  function soughtBy(event: ToolEvent, view: HostView): SoughtCrossing | null {
+    const sets = event.type === 'click' ? event.count === 1 : event.type === 'release' && hasMoved(state);
+    if (!sets || !('at' in event) || event.keys.alt || event.keys.ctrl) return null;
+    if (!settingOutAids.getState().takesCrossings) return null;
+    const context = contextFor(view);
+    const { seeksCrossing, drawnCrossing } = overlayOf(state, event.at, event.keys, context);
+    if (seeksCrossing == null || drawnCrossing != null || isLookedAt(seeksCrossing, context)) return null;
+    return { about: seeksCrossing, reach: crossingReach(context) };
   }
 
   const turn = createInkTurn<HostView>(ink, {
@@ -119,9 +135,12 @@ export function createToolHost(
     isUnderWay: (lineId) => store.getState().draft?.lineId === lineId,
   });
 
+  const crossingTurn = createCrossingTurn<HostView>(crossings, { sought: soughtBy, step: carryOut });
+
   return {
     handle,
     edit(event, view) {
+      crossingTurn.flush();
       if (event.type !== 'nudge') settle(view);
       take(editStep(state, event, contextFor(view)), view);
     },
@@ -175,6 +194,8 @@ function perform(
       break;
   }
 }
+
+const hasMoved = (state: ToolState) => state.at === 'dragging' && state.moved;
 
 /** The section's map, worked out again only when the known points or the way of setting out have changed. */
 function rememberedMap(): (document: FlowNetDocument) => SectionMap | null {

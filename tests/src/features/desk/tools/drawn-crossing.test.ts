@@ -1,4 +1,4 @@
-import { afterEach, describe, expect, it } from 'vitest';
+import { afterEach, describe, expect, it, vi } from 'vitest';
 import { createCrossingClient } from '#client/features/desk/model/crossing-client.ts';
 import type { CrossingAnswer, CrossingQuestion } from '#client/features/desk/model/crossing-worker.ts';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
@@ -51,14 +51,56 @@ function deskOver(crossing: [number, number] | null) {
   };
 }
 
-afterEach(() => changeSettingOutAids({ takesCrossings: true }));
+afterEach(() => {
+  changeSettingOutAids({ takesCrossings: true });
+  vi.useRealTimers();
+});
+
+/** What waits for an answer is done in the turn after it. */
+const nextTurn = () => new Promise((resolve) => setImmediate(resolve));
 
 describe('a known point near two drawn lines', () => {
-  it('is set where it was clicked as long as no crossing has been found', () => {
+  it('waits for the crossing there when it is clicked before that is known', async () => {
     const desk = deskOver([204.37, 301.82]);
-    desk.move(200, 300);
+    desk.move(190, 290);
     desk.click(200, 300);
+    // The mouse has gone on; what was clicked is asked about before what it is over now.
+    desk.move(500, 500);
+    expect(desk.points()).toEqual([]);
+    desk.answer();
+    expect(desk.asked.map(({ about }) => about)).toEqual([
+      [190, 290],
+      [200, 300],
+    ]);
+    desk.answer();
+    await nextTurn();
+    expect(desk.points()).toEqual([[204.37, 301.82]]);
+  });
+
+  it('is set where it was clicked where no lines cross, at once when that is known', async () => {
+    const desk = deskOver(null);
+    desk.click(200, 300);
+    desk.answer();
+    await nextTurn();
     expect(desk.points()).toEqual([[200, 300]]);
+    desk.move(240, 300);
+    desk.answer();
+    desk.click(240, 300);
+    expect(desk.points()).toHaveLength(2);
+  });
+
+  it('does not wait for ever, nor once the hand goes on', () => {
+    vi.useFakeTimers();
+    const desk = deskOver([204.37, 301.82]);
+    desk.click(200, 300);
+    desk.click(300, 300);
+    expect(desk.points()).toEqual([[200, 300]]);
+    return vi.advanceTimersByTimeAsync(1000).then(() =>
+      expect(desk.points()).toEqual([
+        [200, 300],
+        [300, 300],
+      ]),
+    );
   });
 
   it('goes to their crossing, which is shown before the click', () => {
@@ -70,12 +112,14 @@ describe('a known point near two drawn lines', () => {
     expect(desk.points()).toEqual([[204.37, 301.82]]);
   });
 
-  it('stays where it was clicked with Alt, with the aid off, and beyond the reach', () => {
+  it('stays where it was clicked with Alt, with the aid off, and beyond the reach', async () => {
     const desk = deskOver([204.37, 301.82]);
     desk.move(200, 300);
     desk.answer();
     desk.click(200, 300, { ...NO_KEYS, alt: true });
     desk.click(180, 300);
+    desk.answer();
+    await nextTurn();
     changeSettingOutAids({ takesCrossings: false });
     desk.click(206, 320);
     expect(desk.points()).toEqual([
@@ -85,13 +129,22 @@ describe('a known point near two drawn lines', () => {
     ]);
   });
 
-  it('goes there too when it is dragged', () => {
+  it('goes there too when it is dragged, known before or not', async () => {
     const desk = deskOver([204.37, 301.82]);
-    desk.click(400, 400);
+    desk.click(400, 400, { ...NO_KEYS, alt: true });
     desk.drag([401, 400], [202, 300]);
     desk.answer();
     desk.letGo(202, 300);
     expect(desk.points()).toEqual([[204.37, 301.82]]);
+
+    const quick = deskOver([204.37, 301.82]);
+    quick.click(400, 400, { ...NO_KEYS, alt: true });
+    quick.drag([401, 400], [203, 300]);
+    quick.letGo(202, 300);
+    quick.answer();
+    quick.answer();
+    await nextTurn();
+    expect(quick.points()).toEqual([[204.37, 301.82]]);
   });
 
   it('is asked about one place at a time, the newest next, and a worker that fails is no answer', () => {
