@@ -146,6 +146,7 @@ const enEditingText = {
     extend: 'Click the line to extend to, or near the end that is to go on.',
     chooseMore: 'Click lines and points to add them to what is chosen, or to leave them out.',
   },
+  restToSee: 'A finger that rests shows first what it would do.',
   leave: 'Leave',
   leaveKey: 'Escape leaves it.',
   chooseMore: 'Choose more',

@@ -7,13 +7,16 @@ export function EditPrompt({ store }: { store: DeskStore }) {
   const asked = useStore(store, (state) => state.pendingEdit?.op ?? null);
   if (asked === null) return null;
   return (
-    <p
-      data-over-sheet
-      className="m-0 flex max-w-full items-baseline gap-3 rounded-sheet border border-ink bg-film px-3 py-1.5"
-    >
-      <span>{text.asks[asked]}</span>
+    <p className="m-0 flex max-w-full items-baseline gap-3 rounded-sheet border border-ink bg-film px-3 py-1.5">
+      <span>
+        {text.asks[asked]}
+        {asked === 'chooseMore' ? null : (
+          <span className="hidden pointer-coarse:inline"> {text.restToSee}</span>
+        )}
+      </span>
       <button
         type="button"
+        data-over-sheet
         aria-keyshortcuts="Escape"
         className="touch shrink-0 border-0 bg-transparent underline"
         onClick={() => store.requestEdit({ type: 'leaveEdit' })}

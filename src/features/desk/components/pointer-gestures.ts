@@ -25,6 +25,8 @@ export type GestureTarget = {
   balloons(): readonly Balloon[];
   /** True while the tool in hand sets something where the sheet is pressed. */
   places(): boolean;
+  /** True while a press points at something rather than setting a place: a finger that rests then reaches as far as a tap. */
+  pointsAt(): boolean;
   /** Tells where the pointer is, and that it has left (`null`). */
   onPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void;
   onPanning(panning: boolean): void;
@@ -63,7 +65,7 @@ export function attachGestures(target: GestureTarget): () => void {
   const sheetAt = (at: ScreenPx) => toSheet(views.getState().view, at);
   const viewFor = (pointerType: string): HostView => ({
     zoom: sheetZoom(views.getState().view),
-    reachPx: held === null ? (REACH_PX[pointerType] ?? 8) : REACH_HELD_PX,
+    reachPx: held === null || target.pointsAt() ? (REACH_PX[pointerType] ?? 8) : REACH_HELD_PX,
     balloons: target.balloons(),
   });
   const steadyPx = (event: PointerEvent) => STEADY_PX[event.pointerType] ?? 4;

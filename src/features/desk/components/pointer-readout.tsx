@@ -19,9 +19,8 @@ export function PointerReadout({ store }: { store: DeskStore }) {
   return (
     // Spoken at every movement of the pointer it would drown everything else.
     <output
-      data-over-sheet
       aria-live="off"
-      className="pointer-events-auto flex flex-wrap gap-x-4 rounded-sheet border border-rule bg-film px-2.5 py-1"
+      className="pointer-events-none flex flex-wrap gap-x-4 rounded-sheet border border-rule bg-film px-2.5 py-1"
     >
       {words === null ? (
         <span>{text.pixels(at[0], at[1])}</span>

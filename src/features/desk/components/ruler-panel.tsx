@@ -9,6 +9,9 @@ import type { DeskStore } from '../model/desk-state.ts';
 import { NO_RULER, rulerOf } from '../model/ruler.ts';
 import { areaWords, legCells, lengthDecimals, rulerCopy, rulerHeads, wholeCells } from './ruler-words.ts';
 
+/** With more legs than this the table is scrolled, and takes the pointer for it. */
+const LEGS_IN_SIGHT = 8;
+
 /** What the ruler has measured, leg by leg, while it is in hand. */
 export function RulerPanel({ store }: { store: DeskStore }) {
   const inHand = useStore(store, (state) => state.tool === 'ruler');
@@ -23,7 +26,7 @@ function Measured({ store }: { store: DeskStore }) {
   const note = map === null ? text.notSetOut : exaggerated ? text.exaggerated : null;
   return (
     <section
-      data-over-sheet
+      data-over-sheet={figures.legs.length > LEGS_IN_SIGHT || undefined}
       aria-label={text.title}
       className="max-h-64 max-w-full overflow-auto rounded-sheet border border-rule bg-film px-2.5 py-1.5 text-sm"
     >
@@ -32,7 +35,7 @@ function Measured({ store }: { store: DeskStore }) {
       ) : (
         <>
           <LegTable figures={figures} decimals={decimals} unit={unit} />
-          <div className="mt-1 flex items-center gap-3">
+          <div data-over-sheet className="mt-1 flex items-center gap-3">
             <output>{areaWords(figures, decimals, unit)}</output>
             <CopyButton words={rulerCopy(figures, decimals, unit)} />
             <button

@@ -96,12 +96,14 @@ export function HiddenHint({ store }: { store: DeskStore }) {
   if (hidden.length === 0) return null;
   const listed = SHEET_KINDS.filter((kind) => hidden.includes(kind));
   return (
-    <p
-      data-over-sheet
-      className="m-0 flex max-w-96 items-center gap-3 rounded-sheet border border-attention bg-doubt px-2.5 py-1 text-sm"
-    >
+    <p className="m-0 flex max-w-96 items-center gap-3 rounded-sheet border border-attention bg-doubt px-2.5 py-1 text-sm">
       <span className="min-w-0">{text.hidden(listed)}</span>
-      <button type="button" className="touch shrink-0 underline" onClick={() => store.setHidden([])}>
+      <button
+        type="button"
+        data-over-sheet
+        className="touch shrink-0 underline"
+        onClick={() => store.setHidden([])}
+      >
         {text.showAll}
       </button>
     </p>

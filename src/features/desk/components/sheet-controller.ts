@@ -8,6 +8,7 @@ import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { drawingWayChoice } from '../model/drawing-way.ts';
 import { createInkClient } from '../model/ink-client.ts';
 import type { LiveHelpSource } from '../model/live-help-source.ts';
+import { asksForLine, pressSets } from '../model/press-meaning.ts';
 import { rulerOf } from '../model/ruler.ts';
 import { settingOutAids } from '../model/setting-out-aids.ts';
 import type { SheetRaster } from '../model/sheet-raster.ts';
@@ -172,12 +173,6 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     options.onFinger(at);
   }
 
-  /** A note may be written where nothing may be changed. */
-  function places(): boolean {
-    const { tool, readOnly } = store.getState();
-    return tool === 'note' || (tool !== 'select' && !readOnly);
-  }
-
   function key(event: KeyboardEvent): void {
     if (event.defaultPrevented || isTyping(event.target)) return;
     const inSheet = event.target === element;
@@ -212,7 +207,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       views,
       host,
       balloons,
-      places,
+      places: () => pressSets(store.getState()),
+      pointsAt: () => asksForLine(store.getState()),
       onPointer: followMouse,
       onPanning: options.onPanning,
       onFinger: holdByFinger,

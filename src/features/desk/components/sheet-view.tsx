@@ -9,7 +9,7 @@ import type { DeskStore } from '../model/desk-state.ts';
 import { createLiveHelp } from '../model/live-help-source.ts';
 import { rasterOf, type SheetRaster } from '../model/sheet-raster.ts';
 import type { ToolId } from '../model/tool-choice.ts';
-import { createViewStore } from '../model/view-store.ts';
+import { createViewStore, type ViewStore } from '../model/view-store.ts';
 import { type SheetFrame, toScreen, type Viewport } from '../model/viewport.ts';
 import type { NoteBalloon } from '../render/build-scene.ts';
 import { aboveFinger } from './above-finger.ts';
@@ -47,6 +47,8 @@ type SheetViewProps = {
   /** Accessible name: which section of which drawing is shown. */
   label: string;
   className?: string;
+  /** The view of this sheet, where somebody else follows or moves it too; another one needs another `key`. */
+  views?: ViewStore;
   /** What the title block of a picture says; left out where none is made. */
   picture?: () => PictureFacts;
 };
@@ -64,6 +66,7 @@ export function SheetView({
   notes,
   label,
   className,
+  views: given,
   picture,
 }: SheetViewProps) {
   const opened = useOpenedSheet(sheet);
@@ -73,7 +76,7 @@ export function SheetView({
   // The frame comes as a new array with every answer of the server; the view keeps the one it was made with.
   const outline = useRef(frame);
   const [shown] = useState(() => raster ?? rasterOf(sheet, true));
-  const [views] = useState(() => createViewStore(shown, frame));
+  const [views] = useState(() => given ?? createViewStore(shown, frame));
   const [crosshair] = useState(createCrosshair);
   const help = useMemo(() => createLiveHelp(store), [store]);
   const [controller, setController] = useState<SheetController | null>(null);
@@ -166,8 +169,8 @@ export function SheetView({
           <ZoomBar views={views} />
         </div>
       </div>
-      {/* Above the labels of the grid, which stand along the foot. */}
-      <div className="pointer-events-none absolute inset-x-3 bottom-8 flex flex-wrap items-end justify-between gap-2 [&>*]:pointer-events-auto">
+      {/* Above the labels of the grid, which stand along the foot. What is only read lets clicks through to the sheet. */}
+      <div className="pointer-events-none absolute inset-x-3 bottom-8 flex flex-wrap items-end justify-between gap-2 [&_[data-over-sheet]]:pointer-events-auto">
         <div className="flex flex-col items-start gap-2">
           <HiddenHint store={store} />
           <CrosshairBar

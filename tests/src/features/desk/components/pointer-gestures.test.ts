@@ -1,6 +1,7 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { attachGestures } from '#client/features/desk/components/pointer-gestures.ts';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
+import { asksForLine, pressSets } from '#client/features/desk/model/press-meaning.ts';
 import { selectOne } from '#client/features/desk/model/selection.ts';
 import { createViewStore } from '#client/features/desk/model/view-store.ts';
 import { sheetZoom, toSheet } from '#client/features/desk/model/viewport.ts';
@@ -19,7 +20,13 @@ class Glass extends EventTarget {
 }
 
 type Kind = 'mouse' | 'touch' | 'pen';
-type Told = { pointer: SheetPx | null; finger: readonly [number, number] | null; panning: boolean };
+type Told = {
+  pointer: SheetPx | null;
+  /** What an edit asked for would do there. */
+  sketches: string[];
+  finger: readonly [number, number] | null;
+  panning: boolean;
+};
 
 function deskUnderGlass() {
   const glass = new Glass();
@@ -31,15 +38,19 @@ function deskUnderGlass() {
   const store = createDeskStore(opened, { newId: countedIds() });
   const views = createViewStore({ widthPx: 1000, heightPx: 700 }, null);
   views.resize(1032, 732);
-  const told: Told = { pointer: null, finger: null, panning: false };
+  const told: Told = { pointer: null, sketches: [], finger: null, panning: false };
+  const host = createToolHost(store);
   const end = attachGestures({
     element: glass as unknown as HTMLElement,
     views,
-    host: createToolHost(store),
+    host,
     balloons: () => [],
-    places: () => store.getState().tool !== 'select',
-    onPointer: (at) => {
+    places: () => pressSets(store.getState()),
+    pointsAt: () => asksForLine(store.getState()),
+    onPointer: (at, keys, view) => {
       told.pointer = at;
+      told.sketches =
+        at === null ? [] : (host.overlay(at, keys, view).sketches ?? []).map(({ kind }) => kind);
     },
     onPanning: (panning) => {
       told.panning = panning;
@@ -172,6 +183,20 @@ describe('a finger that rests', () => {
     desk.send('move', 'touch', at[0] + 60, at[1]);
     desk.send('up', 'touch', at[0] + 60, at[1]);
     expect(desk.lineOf()?.[0]?.[0]).toBeCloseTo(260, 0);
+  });
+
+  it('shows what an edit asked for would do, and does it when it is lifted', () => {
+    desk.store.select(selectOne('line', LINE_A));
+    desk.store.setPendingEdit({ op: 'split', lineId: LINE_A });
+    const zoom = sheetZoom(desk.view());
+    const beside = [16 + 250 * zoom + 12, 16 + 350 * zoom] as const;
+    desk.send('down', 'touch', ...beside);
+    expect(desk.told.sketches).toEqual([]);
+    desk.after(400);
+    expect(desk.told.sketches).not.toEqual([]);
+    expect(entitiesOf(desk.store.getState().document, 'line')).toHaveLength(1);
+    desk.send('up', 'touch', ...beside);
+    expect(entitiesOf(desk.store.getState().document, 'line')).toHaveLength(2);
   });
 
   it('lets go of what it held when a second finger comes', () => {
