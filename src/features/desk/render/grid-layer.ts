@@ -2,11 +2,11 @@ import { gridText as text } from '#client/text/set-out.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { decimalsOf, type GridLine, sectionGridOf } from '../model/section-grid.ts';
 import type { Viewport } from '../model/viewport.ts';
-import { COLOURS } from './line-look.ts';
+import { COLOURS, HALO } from './line-look.ts';
 
 const FONT = '12px "Public Sans", "Liberation Sans", Arial, sans-serif';
-/** Pale on the sheet, with a halo of film, so that the grid is told from dark and from pale ground. */
-const LINE_ALPHA = 0.75;
+/** As pale as it may be to be told from dark and from pale ground, with its halo of film. */
+export const GRID = { colour: COLOURS.attention, alpha: 0.9, widthPx: 1 } as const;
 
 export type GridLayer = {
   /** Shows the grid of a section in a view, or none with null; drawn with the next frame. */
@@ -77,13 +77,10 @@ function paintGrid(canvas: HTMLCanvasElement, map: SectionMap, view: Viewport): 
 }
 
 function paintLines(context: CanvasRenderingContext2D, lines: readonly GridLine[]): void {
-  context.globalAlpha = LINE_ALPHA;
-  for (const [colour, width] of [
-    [COLOURS.film, 3],
-    [COLOURS.attention, 1],
-  ] as const) {
+  for (const { colour, alpha, widthPx } of [{ ...HALO, widthPx: 3 }, GRID]) {
+    context.globalAlpha = alpha;
     context.strokeStyle = colour;
-    context.lineWidth = width;
+    context.lineWidth = widthPx;
     context.beginPath();
     for (const { from, to } of lines) {
       context.moveTo(...from);

@@ -12,6 +12,12 @@ export const COLOURS = {
   attention: '#9a6100',
 } as const;
 
+/**
+ * Everything drawn over the scan lies on a halo of film, so that its own colour is told from dark ground too: at this
+ * strength three to one even over black (WCAG 2.2, 1.4.11).
+ */
+export const HALO = { colour: COLOURS.film, alpha: 0.85, widthPx: 3 } as const;
+
 export type EndMark = 'none' | 'bar' | 'dot' | 'ring' | 'level' | 'square';
 
 /** How a kind of line looks, in screen pixels: kinds differ by dash and end mark as well as by colour. */

@@ -81,8 +81,7 @@ const label: Painter = (context, mark) => {
     context.beginPath();
     context.moveTo(0, 0);
     context.lineTo(dx, dy);
-    context.lineWidth = 0.8;
-    context.stroke();
+    haloStroke(context, mark, 0.8);
   }
   context.fillStyle = COLOURS.film;
   context.lineWidth = mark.strong ? 2 : 1;

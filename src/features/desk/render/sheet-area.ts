@@ -1,5 +1,6 @@
 import { FabricObject } from 'fabric';
 import type { SheetFrame } from '../model/viewport.ts';
+import { HALO } from './line-look.ts';
 import type { SceneArea } from './scene.ts';
 import { framesMeet, seenBy } from './seen-by.ts';
 
@@ -45,7 +46,11 @@ export class SheetArea extends FabricObject {
     context.fillStyle = colour;
     context.fill();
     if (edged) {
-      context.globalAlpha = 0.9;
+      context.globalAlpha = HALO.alpha;
+      context.strokeStyle = HALO.colour;
+      context.lineWidth = (EDGE_PX + HALO.widthPx) / zoom;
+      context.stroke();
+      context.globalAlpha = 1;
       context.strokeStyle = colour;
       context.lineWidth = EDGE_PX / zoom;
       context.stroke();

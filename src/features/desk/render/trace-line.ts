@@ -2,14 +2,13 @@ import { Polyline } from 'fabric';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { SheetFrame } from '../model/viewport.ts';
 import { type LinePiece, piecesIn } from './clip-line.ts';
-import { COLOURS, type EndMark } from './line-look.ts';
+import { COLOURS, type EndMark, HALO } from './line-look.ts';
 import type { SceneLine } from './scene.ts';
 import { framesMeet, holdsFrame, seenBy } from './seen-by.ts';
 
-const HALO_PX = 3;
-const HALO_ALPHA = 0.72;
 const STRONGER_PX = 1.2;
 const HATCH_LENGTH_PX = 6;
+const HATCH_PX = 1;
 /** How far marks and hatching reach beyond the line, screen pixels. */
 const REACH_PX = 16;
 
@@ -45,29 +44,42 @@ export class TraceLine extends Polyline {
     context.save();
     context.lineJoin = 'round';
     context.lineCap = 'butt';
-    context.globalAlpha = HALO_ALPHA;
-    strokePieces(context, pieces, COLOURS.film, (widthPx + HALO_PX) / zoom, []);
+    const ticks =
+      look.hatchPx > 0
+        ? ticksOf(pieces, look.hatchPx / zoom, HATCH_LENGTH_PX / zoom, isDrawnRightwards(this.item.points))
+        : null;
+    context.globalAlpha = HALO.alpha;
+    strokePieces(context, pieces, HALO.colour, (widthPx + HALO.widthPx) / zoom, []);
+    if (ticks !== null) strokePath(context, ticks, HALO.colour, HATCH_PX + HALO.widthPx, zoom);
     context.globalAlpha = 1;
     const dash = look.dashPx.map((length) => length / zoom);
     strokePieces(context, pieces, look.colour, widthPx / zoom, dash);
-    if (look.hatchPx > 0)
-      hatch(context, pieces, look.hatchPx / zoom, zoom, isDrawnRightwards(this.item.points));
+    if (ticks !== null) strokePath(context, ticks, look.colour, HATCH_PX, zoom);
     this.endMarks(context, zoom);
     context.restore();
   }
 
+  /** The marks at both ends, on halos of their own as they reach beyond the line's. */
   private endMarks(context: CanvasRenderingContext2D, zoom: number): void {
     const { points, look } = this.item;
     const first = points[0];
     const last = points.at(-1);
     if (look.end === 'none' || first === undefined || last === undefined) return;
-    if (look.end === 'level') {
-      // A water level stands where the water ends: at the upper end of a face, at the start of a phreatic line.
-      endMark(context, look.end, last[1] < first[1] ? last : first, first, look.colour, zoom);
-      return;
+    const path = new Path2D();
+    // A water level stands where the water ends: at the upper end of a face, at the start of a phreatic line.
+    if (look.end === 'level') addLevel(path, last[1] < first[1] ? last : first, 1 / zoom);
+    else addEnd(path, look.end, first, points[1] ?? first, 1 / zoom);
+    if (look.end !== 'level' && points.length > 1)
+      addEnd(path, look.end, last, points.at(-2) ?? last, 1 / zoom);
+    const widthPx = look.end === 'bar' ? 2 : 1.4;
+    context.globalAlpha = HALO.alpha;
+    strokePath(context, path, HALO.colour, widthPx + HALO.widthPx, zoom);
+    context.globalAlpha = 1;
+    if (look.end !== 'bar' && look.end !== 'level') {
+      context.fillStyle = look.end === 'dot' ? look.colour : COLOURS.film;
+      context.fill(path);
     }
-    endMark(context, look.end, first, points[1] ?? first, look.colour, zoom);
-    if (points.length > 1) endMark(context, look.end, last, points.at(-2) ?? last, look.colour, zoom);
+    if (look.end !== 'dot') strokePath(context, path, look.colour, widthPx, zoom);
   }
 }
 
@@ -97,18 +109,22 @@ function isDrawnRightwards(points: readonly SheetPoint[]): boolean {
   return (points.at(-1)?.[0] ?? 0) >= (points[0]?.[0] ?? 0);
 }
 
-/** Slanting ticks on the side that is below as the line lies, as soil and rock are hatched on drawings. */
-function hatch(
+function strokePath(
   context: CanvasRenderingContext2D,
-  pieces: readonly LinePiece[],
-  spacing: number,
+  path: Path2D,
+  colour: string,
+  widthPx: number,
   zoom: number,
-  rightwards: boolean,
 ): void {
-  const length = HATCH_LENGTH_PX / zoom;
+  context.strokeStyle = colour;
+  context.lineWidth = widthPx / zoom;
+  context.stroke(path);
+}
+
+/** Slanting ticks on the side that is below as the line lies, as soil and rock are hatched on drawings. */
+function ticksOf(pieces: readonly LinePiece[], spacing: number, length: number, rightwards: boolean): Path2D {
+  const path = new Path2D();
   const side = rightwards ? 1 : -1;
-  context.lineWidth = 1 / zoom;
-  context.beginPath();
   for (const { points, start } of pieces) {
     let along = start;
     for (let i = 0; i + 1 < points.length; i += 1) {
@@ -121,55 +137,39 @@ function hatch(
       for (let s = Math.ceil(along / spacing) * spacing; s < along + segment; s += spacing) {
         const x = ax + (s - along) * tx;
         const y = ay + (s - along) * ty;
-        context.moveTo(x, y);
-        context.lineTo(x + side * (-ty - 0.6 * tx) * length, y + side * (tx - 0.6 * ty) * length);
+        path.moveTo(x, y);
+        path.lineTo(x + side * (-ty - 0.6 * tx) * length, y + side * (tx - 0.6 * ty) * length);
       }
       along += segment;
     }
   }
-  context.stroke();
+  return path;
 }
 
-function endMark(
-  context: CanvasRenderingContext2D,
-  mark: EndMark,
+function addLevel(path: Path2D, at: SheetPoint, px: number): void {
+  path.moveTo(at[0], at[1] - 2 * px);
+  path.lineTo(at[0] - 5 * px, at[1] - 10 * px);
+  path.lineTo(at[0] + 5 * px, at[1] - 10 * px);
+  path.closePath();
+}
+
+function addEnd(
+  path: Path2D,
+  mark: Exclude<EndMark, 'none' | 'level'>,
   at: SheetPoint,
   next: SheetPoint,
-  colour: string,
-  zoom: number,
+  px: number,
 ): void {
-  const px = 1 / zoom;
-  context.fillStyle = colour;
-  context.strokeStyle = colour;
-  context.beginPath();
   if (mark === 'bar') {
     const length = Math.hypot(next[0] - at[0], next[1] - at[1]) || 1;
     const nx = (-(next[1] - at[1]) / length) * 4 * px;
     const ny = ((next[0] - at[0]) / length) * 4 * px;
-    context.moveTo(at[0] - nx, at[1] - ny);
-    context.lineTo(at[0] + nx, at[1] + ny);
-    context.lineWidth = 2 * px;
-    context.stroke();
-  } else if (mark === 'level') {
-    context.moveTo(at[0], at[1] - 2 * px);
-    context.lineTo(at[0] - 5 * px, at[1] - 10 * px);
-    context.lineTo(at[0] + 5 * px, at[1] - 10 * px);
-    context.closePath();
-    context.lineWidth = 1.4 * px;
-    context.stroke();
+    path.moveTo(at[0] - nx, at[1] - ny);
+    path.lineTo(at[0] + nx, at[1] + ny);
   } else if (mark === 'square') {
-    context.rect(at[0] - 3.2 * px, at[1] - 3.2 * px, 6.4 * px, 6.4 * px);
-    context.lineWidth = 1.4 * px;
-    context.fillStyle = COLOURS.film;
-    context.fill();
-    context.stroke();
+    path.rect(at[0] - 3.2 * px, at[1] - 3.2 * px, 6.4 * px, 6.4 * px);
   } else {
-    context.arc(at[0], at[1], 3 * px, 0, 2 * Math.PI);
-    context.lineWidth = 1.4 * px;
-    if (mark === 'ring') {
-      context.fillStyle = COLOURS.film;
-      context.fill();
-      context.stroke();
-    } else context.fill();
+    path.moveTo(at[0] + 3 * px, at[1]);
+    path.arc(at[0], at[1], 3 * px, 0, 2 * Math.PI);
   }
 }
