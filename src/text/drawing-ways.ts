@@ -6,13 +6,13 @@ const enDrawingWay = {
   title: 'Way of drawing',
   names: {
     straight: 'Straight',
-    smooth: 'Smooth',
+    smooth: 'Curve',
     freehand: 'Freehand',
     ink: 'Follow ink',
   } satisfies Record<DrawingWay, string>,
   hints: {
     straight: 'Straight from click to click. D changes the way of drawing.',
-    smooth: 'A smooth curve through the clicks. D changes the way of drawing.',
+    smooth: 'A curve through the clicks. D changes the way of drawing.',
     freehand: 'Hold and draw; letting go keeps the stroke without its tremor. D changes the way of drawing.',
     ink: 'Follows the drawn line from click to click. D changes the way of drawing.',
   } satisfies Record<DrawingWay, string>,

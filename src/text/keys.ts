@@ -45,7 +45,7 @@ const DOES = {
   takeBack: 'Take back the last point; remove what is chosen',
   cancel: 'Cancel; lay the tool down',
   leaveEdit: 'Leave what is asked for',
-  drawingWay: 'Next way of drawing: straight, smooth, freehand, along the ink',
+  drawingWay: 'Next way of drawing: straight, curve, freehand, along the ink',
   nudge: 'Move what is chosen one pixel of the sheet, while no crosshair is shown',
   nudgeFar: 'Move what is chosen ten pixels',
   remove: 'Remove the chosen point of a line, or what is chosen',

@@ -93,7 +93,7 @@ describe('drawing on a real scan', () => {
   it('a contour is followed along its ink in three clicks, and the line lies on dark pixels', async () => {
     await hand.sheet.focus();
     await page.keyboard.press('f');
-    for (const name of ['Smooth', 'Freehand', 'Follow ink']) {
+    for (const name of ['Curve', 'Freehand', 'Follow ink']) {
       await page.keyboard.press('d');
       await way(name).waitFor();
     }
@@ -121,7 +121,7 @@ describe('drawing on a real scan', () => {
     await hand.sheet.focus();
     await page.keyboard.press('e');
     await way('Follow ink').waitFor();
-    await page.getByRole('button', { name: 'Smooth', exact: true }).click();
+    await page.getByRole('button', { name: 'Curve', exact: true }).click();
     await hand.sheet.focus();
     const clicks: SheetPoint[] = [
       [300, 1180],

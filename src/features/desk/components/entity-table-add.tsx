@@ -1,4 +1,4 @@
-import { type FormEvent, type ReactNode, useState } from 'react';
+import { type FormEvent, type KeyboardEvent, type ReactNode, useState } from 'react';
 import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
 import { NumberField, SelectField, TextArea, TextField } from '#client/components/field.tsx';
@@ -172,7 +172,13 @@ interface AddProps {
 
 function Add({ title, onSubmit, children }: AddProps) {
   return (
-    <form noValidate aria-label={title} className="mt-2 border-b border-rule pb-4" onSubmit={onSubmit}>
+    <form
+      noValidate
+      aria-label={title}
+      className="mt-2 border-b border-rule pb-4"
+      onSubmit={onSubmit}
+      onKeyDown={leaveFilledField}
+    >
       <h4 className="mt-0 mb-1 text-sm font-semibold">{title}</h4>
       <div className="flex flex-wrap items-start gap-3">{children}</div>
       <div className="mt-2">
@@ -182,4 +188,14 @@ function Add({ title, onSubmit, children }: AddProps) {
       </div>
     </form>
   );
+}
+
+/** Escape leaves a field in which something stands, and does not close the table with what was typed. */
+function leaveFilledField(event: KeyboardEvent<HTMLFormElement>): void {
+  const { target, currentTarget } = event;
+  const isField = target instanceof HTMLInputElement || target instanceof HTMLTextAreaElement;
+  if (event.key !== 'Escape' || !isField || target.value === '') return;
+  event.preventDefault();
+  event.stopPropagation();
+  currentTarget.querySelector('button')?.focus();
 }

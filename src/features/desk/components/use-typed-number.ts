@@ -82,6 +82,8 @@ export function useTypedNumber({
         }
         if (event.key === 'Escape' && typed !== null && typed !== asEntered(value)) {
           event.stopPropagation();
+          // Else the dialog around it would close too.
+          event.preventDefault();
           setTyped(asEntered(value));
           setError(null);
         }

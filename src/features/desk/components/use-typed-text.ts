@@ -15,10 +15,12 @@ export function useTypedText(value: string, onCommit: (value: string) => void) {
     value: typed ?? value,
     onChange: (event: { target: { value: string } }) => setTyped(event.target.value),
     onBlur: commit,
-    onKeyDown: (event: { key: string; stopPropagation(): void }) => {
+    onKeyDown: (event: { key: string; preventDefault(): void; stopPropagation(): void }) => {
       if (event.key === 'Enter') commit();
       if (event.key === 'Escape' && typed !== null) {
         event.stopPropagation();
+        // Else the dialog around it would close too.
+        event.preventDefault();
         setTyped(null);
       }
     },
