@@ -10,20 +10,29 @@ export interface TrailStep {
 }
 
 /** The bar at the head of every signed-in page: mark, where one is, and what the page offers. */
-export function TopBar({ trail, end }: { trail: readonly TrailStep[]; end?: ReactNode }) {
+export function TopBar({
+  trail,
+  end,
+  isFull = false,
+}: {
+  trail: readonly TrailStep[];
+  end?: ReactNode;
+  /** Much stands at the end of the bar: on a telephone the mark then goes without its word. */
+  isFull?: boolean;
+}) {
   return (
-    <header className="flex min-h-[46px] flex-wrap items-center gap-x-[18px] gap-y-1 border-b border-rule bg-film px-4 py-1 max-sm:px-3">
+    <header className="flex min-h-[46px] flex-wrap items-center gap-x-[18px] gap-y-1 border-b max-sm:gap-x-2 border-rule bg-film px-4 py-1 max-sm:px-3">
       <a href="#content" className="sr-only focus:not-sr-only">
         {commonText.skip}
       </a>
-      <Mark />
+      <Mark withoutWord={isFull} />
       <Trail steps={trail} />
-      <div className="ml-auto flex flex-wrap items-center gap-2.5">{end}</div>
+      <div className="ml-auto flex flex-wrap items-center gap-2.5 max-sm:gap-2">{end}</div>
     </header>
   );
 }
 
-export function Mark() {
+export function Mark({ withoutWord = false }: { withoutWord?: boolean }) {
   return (
     <Link to={paths.dams} className="touch flex items-center gap-2 font-bold tracking-[0.01em] no-underline">
       <svg width="20" height="20" viewBox="0 0 20 20" aria-hidden="true" className="shrink-0">
@@ -32,7 +41,7 @@ export function Mark() {
           <path d="M2 17h16" />
         </g>
       </svg>
-      {commonText.product}
+      <span className={withoutWord ? 'max-sm:sr-only' : undefined}>{commonText.product}</span>
     </Link>
   );
 }

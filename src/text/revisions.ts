@@ -3,6 +3,8 @@ import { inLanguage } from './language.ts';
 /** Words of sending for checking and of the check itself. */
 const enSendingText = {
   button: 'Send for checking',
+  /** The same on a telephone, where the bar has no room for more. */
+  short: 'Send',
   title: (label: string) => `Send for checking as revision ${label}`,
   lead: 'The net and its figures are frozen as they stand and kept. The reviewers get a mail with a link.',
   unsaved: 'Some changes are not saved yet. They are sent first.',
@@ -25,6 +27,9 @@ const enSendingText = {
   reasonsNeeded: (count: number) =>
     count === 1 ? 'One reason is still missing.' : `${count} reasons are still missing.`,
   reasonForRest: 'Use this reason for all without one',
+  blindFirst: 'Ask for a blind reading first',
+  blindFirstHint:
+    'The reviewers may always read points on the net alone before they see the figures. When it is asked for, the mail tells no figures either.',
   message: 'Message to the reviewer',
   messageHint: 'May stay empty.',
   send: 'Send',

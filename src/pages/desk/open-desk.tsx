@@ -84,6 +84,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
     <div className="flex h-dvh flex-col overflow-hidden">
       <title>{`${sectionName}, ${detail.net.name} – ${commonText.product}`}</title>
       <AppFrame
+        isFull
         trail={[
           { label: detail.dam.name, to: paths.dam(detail.dam.id) },
           { label: drawingName, to: paths.drawing(drawing.id, sheet.pageNumber) },
@@ -96,8 +97,9 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
               <SavingLine saving={saving} store={store} onCompare={() => setDialog('compare')} />
             ) : null}
             {detail.can.includes('net.send') && readOnly === null ? (
-              <Button look="main" onClick={() => setDialog('send')}>
-                {sendingText.button}
+              <Button look="main" aria-label={sendingText.button} onClick={() => setDialog('send')}>
+                <span className="sm:hidden">{sendingText.short}</span>
+                <span className="max-sm:hidden">{sendingText.button}</span>
               </Button>
             ) : null}
           </>
@@ -162,7 +164,7 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
                 onSheet={() => setPane('sheet')}
               />
             ) : margin.shows === 'revisions' ? (
-              <RevisionsPane netId={netId} flush={flush} onClose={closeForm} />
+              <RevisionsPane netId={netId} damId={detail.dam.id} flush={flush} onClose={closeForm} />
             ) : (
               <NetNotes
                 netId={netId}
