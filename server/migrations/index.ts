@@ -17,6 +17,7 @@ import { DocumentVersion31796126400111 } from './1796126400111-document-version-
 import { NetPresence1796126400120 } from './1796126400120-net-presence.ts';
 import { NoteThreads1796126400130 } from './1796126400130-note-threads.ts';
 import { SignedDecisions1796126400140 } from './1796126400140-signed-decisions.ts';
+import { Register1796126400157 } from './1796126400157-register.ts';
 
 /** In the order they run. */
 export const migrations = [
@@ -39,4 +40,5 @@ export const migrations = [
   NetPresence1796126400120,
   NoteThreads1796126400130,
   SignedDecisions1796126400140,
+  Register1796126400157,
 ];

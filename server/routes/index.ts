@@ -13,6 +13,7 @@ import { netRoutes } from './net-routes.ts';
 import { noteRoutes } from './note-routes.ts';
 import { peopleRoutes } from './people-routes.ts';
 import { presenceRoutes } from './presence-routes.ts';
+import { registerRoutes } from './register-routes.ts';
 import { renditionRoutes } from './rendition-routes.ts';
 import { revisionRoutes } from './revision-routes.ts';
 import { scheduleRoutes } from './schedule-routes.ts';
@@ -27,6 +28,7 @@ export const routes: readonly RouteRecord[] = [
   ...damRoutes,
   ...damSeepageRoutes,
   ...archiveRoutes,
+  ...registerRoutes,
   ...waitingRoutes,
   ...liveRoutes,
   ...mailRoutes,

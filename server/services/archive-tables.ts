@@ -68,5 +68,7 @@ export const LEFT_OUT: Record<string, string> = {
   sign_in_failure: 'counts of wrong passwords end with the installation',
   outbox_mail: 'a mail is sent once, by the installation that wrote it',
   net_presence: 'who has a net open now',
+  register_entry: 'worked out of the other tables as their rows are entered',
+  register_stale: 'drawings of which a transaction has still to bring the register up to date',
   migration: 'the state of the schema itself',
 };

@@ -5,6 +5,7 @@ import { damActionsFor } from '#server/policies/dam-policy.ts';
 import type { DamRole } from '#shared/contract/actions.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
+import { isUnreadBy } from './unread-notes.ts';
 
 interface DamRow {
   id: string;
@@ -24,20 +25,12 @@ interface DamRow {
 const NOTES_OF_DAM = `FROM note o JOIN net n ON n.id = o.net_id JOIN section c ON c.id = n.section_id
       JOIN sheet s ON s.id = c.sheet_id JOIN drawing w ON w.id = s.drawing_id
       WHERE w.dam_id = d.id AND w.archived_at IS NULL AND n.archived_at IS NULL AND c.archived_at IS NULL`;
-/** Something in the note was written by somebody else after what the person ($1) has read of it. */
-const UNREAD = `EXISTS (
-        SELECT 1 FROM (
-          SELECT e.author_id, row_number() OVER (ORDER BY e.created_at, e.id) AS place
-          FROM note_entry e WHERE e.note_id = o.id
-        ) e
-        WHERE e.author_id <> $1 AND e.place > coalesce(
-          (SELECT r.entries FROM note_read r WHERE r.note_id = o.id AND r.person_id = $1), 0))`;
 
 /** The same rule as `dam.read` in the policy: members see their dams, admins all. $1 = person, $2 = admin. */
 const DAMS_SEEN_BY = `SELECT d.*, m.roles,
     (SELECT count(*)::int FROM drawing w WHERE w.dam_id = d.id AND w.archived_at IS NULL) AS drawing_count,
     (SELECT count(*)::int ${NOTES_OF_DAM} AND o.state <> 'closed') AS open_note_count,
-    (SELECT count(*)::int ${NOTES_OF_DAM} AND m.person_id IS NOT NULL AND ${UNREAD}) AS unread_note_count
+    (SELECT count(*)::int ${NOTES_OF_DAM} AND m.person_id IS NOT NULL AND ${isUnreadBy('$1')}) AS unread_note_count
   FROM dam d LEFT JOIN membership m ON m.dam_id = d.id AND m.person_id = $1
   WHERE (m.person_id IS NOT NULL OR $2::boolean)`;
 

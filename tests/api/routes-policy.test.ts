@@ -60,6 +60,7 @@ const SIGNED_IN = [
   'post /me/password',
   'patch /me',
   'get /dams',
+  'get /register',
   'get /waiting',
   'get /live',
   'get /mails',
