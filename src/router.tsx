@@ -47,6 +47,7 @@ const signedInPages = [
     '/dams/:damId/seepage',
     async () => (await import('./pages/dam-seepage/dam-seepage-page.tsx')).DamSeepagePage,
   ),
+  page('/dams/:damId/compare', async () => (await import('./pages/compare/compare-page.tsx')).ComparePage),
   page('/drawings/:drawingId', async () => (await import('./pages/drawing/drawing-page.tsx')).DrawingPage),
   page(
     '/drawings/:drawingId/carry/:sectionId',

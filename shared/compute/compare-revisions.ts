@@ -12,6 +12,7 @@ import type {
 } from '#shared/contract/revision-comparison.ts';
 import { distanceToPolyline, type Polyline, polylineOf } from './geometry/polyline.ts';
 import type { Pair } from './geometry/predicates.ts';
+import { isSameFigure } from './same-figure.ts';
 
 /** A net as frozen: its document and the reading of it. */
 export interface FrozenNet {
@@ -211,11 +212,8 @@ function changedFacts(before: Facts, after: Facts): ChangedFact[] {
     .filter((fact) => !isSame(fact.before, fact.after));
 }
 
-/** Figures that differ in the last bits only, as after the same run on another machine, are the same. */
-function isSame(a: string | number | null, b: string | number | null): boolean {
-  if (typeof a !== 'number' || typeof b !== 'number') return a === b;
-  return Math.abs(a - b) <= 1e-9 * Math.max(Math.abs(a), Math.abs(b));
-}
+const isSame = (a: string | number | null, b: string | number | null) =>
+  typeof a === 'number' && typeof b === 'number' ? isSameFigure(a, b) : a === b;
 
 function comparedPoints(before: NetReading, after: NetReading): ComparedPoint[] {
   const were = new Map(before.points.map((point) => [point.id, point]));

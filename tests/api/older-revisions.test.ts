@@ -1,7 +1,11 @@
 import { createHash } from 'node:crypto';
 import canonicalize from 'canonicalize';
 import { afterAll, beforeAll, expect, it } from 'vitest';
+import { besideFrozen } from '#shared/compute/compare-figures/run-again.ts';
+import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
+import { readNet } from '#shared/compute/read-net.ts';
 import { FLOW_NET_VERSION } from '#shared/contract/document.ts';
+import type { RevisionDto } from '#shared/contract/revisions.ts';
 import { firstDocument, firstReading } from '#tests/support/first-version/first-version.ts';
 import { beginLine, SIGNATURE, sendInputFor, sentRevision } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
@@ -59,4 +63,25 @@ it('a revision frozen by the first version is decided on, and the next one is ch
   await caller.post(`/nets/${netId}/revisions`, input).expect(201);
   const { body } = await caller.get(`/revisions/${input.id}`).expect(200);
   expect(body.payload.previousHash).toBe(hash);
+});
+
+it('a revision frozen by the first version is run again by the present engine, and its record stays as it was', async () => {
+  const { caller, netId, revisionId } = await olderRevision();
+  const kept = () => app.db.query('SELECT * FROM revision WHERE net_id = $1', [netId]);
+  const events = () => app.db.query('SELECT count(*) FROM event WHERE net_id = $1', [netId]);
+  const [rows, told] = [await kept(), await events()];
+  const { payload } = (await caller.get(`/revisions/${revisionId}`).expect(200)).body as RevisionDto;
+  expect(payload.engineVersion).not.toBe(ENGINE_VERSION);
+  // As the page does it: the frozen document read anew, nothing sent.
+  const again = besideFrozen(payload.document, payload.reading, readNet(payload.document));
+  expect(again.counts.differ).toBeGreaterThan(0);
+  const heads = again.groups
+    .filter(({ kind }) => kind === 'point')
+    .map(({ figures }) => figures.find(({ what }) => what === 'totalHead')?.one.value);
+  expect(heads).toEqual(firstReading().points.map(({ totalHead }) => totalHead));
+  const after = (await caller.get(`/revisions/${revisionId}`).expect(200)).body as RevisionDto;
+  expect(after.payload).toEqual(payload);
+  expect(await kept()).toEqual(rows);
+  expect(createHash('sha256').update(rows[0].payload).digest('hex')).toBe(after.summary.hash);
+  expect(await events()).toEqual(told);
 });

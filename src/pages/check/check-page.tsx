@@ -23,7 +23,7 @@ import { sectionLabel } from '#shared/text/section-title.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { NetNotes } from '../desk/net-notes.tsx';
 import { CheckGrid, type CheckPane } from './check-grid.tsx';
-import { FrozenSchedule } from './frozen-schedule.tsx';
+import { CheckTables } from './check-tables.tsx';
 import { FrozenTitleBlock } from './frozen-title-block.tsx';
 import { useCheckLive } from './use-check-live.ts';
 import { useFrozenNotes } from './use-frozen-notes.ts';
@@ -31,7 +31,7 @@ import { useRevisionBefore } from './use-revision-before.ts';
 
 const NARROW = '(max-width: 819.98px)';
 
-/** The reviewer's view of a revision: everything on it is the frozen record, nothing is worked out again. */
+/** The reviewer's view of a revision: the frozen record, and apart from it what is worked out when that is asked for. */
 export function CheckPage() {
   const { revisionId = '' } = useParams();
   const { data: revision } = useSuspenseQuery(revisionQuery(revisionId));
@@ -84,7 +84,7 @@ function Check({ revision }: { revision: RevisionDto }) {
               className="min-h-0 flex-1"
             />
           }
-          schedule={<FrozenSchedule payload={payload} store={store} />}
+          schedule={<CheckTables payload={payload} store={store} onSheet={() => setPane('sheet')} />}
           notes={
             <NetNotes
               netId={payload.netId}
@@ -115,7 +115,17 @@ function Check({ revision }: { revision: RevisionDto }) {
                 <h2 id="history" className="m-0 text-base font-bold">
                   {text.historyTitle}
                 </h2>
-                <RevisionHistory revisions={history} presentId={summary.id} />
+                <RevisionHistory
+                  revisions={history}
+                  presentId={summary.id}
+                  compareWith={(id) =>
+                    paths.compare(
+                      payload.dam.id,
+                      { kind: 'revision', id },
+                      { kind: 'revision', id: summary.id },
+                    )
+                  }
+                />
               </section>
             </>
           }

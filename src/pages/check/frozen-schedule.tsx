@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { type ReactNode, useState } from 'react';
 import { useStore } from 'zustand';
 import { buttonClass } from '#client/components/button.tsx';
 import { Schedule } from '#client/features/desk/components/schedule.tsx';
@@ -15,8 +15,15 @@ import type { RevisionPayload } from '#shared/contract/revisions.ts';
 import { BYTE_ORDER_MARK } from '#shared/text/csv.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 
+interface FrozenScheduleProps {
+  payload: RevisionPayload;
+  store: DeskStore;
+  /** The heading, beside which the other tables are named. */
+  views: ReactNode;
+}
+
 /** The schedule as it was frozen: shown, sorted and kept as CSV, never worked out again. */
-export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; store: DeskStore }) {
+export function FrozenSchedule({ payload, store, views }: FrozenScheduleProps) {
   const { document, reading } = payload;
   const [sort, setSort] = useState<Sort>(ENTERED_ORDER);
   const selection = useStore(store, (state) => state.selection);
@@ -28,7 +35,7 @@ export function FrozenSchedule({ payload, store }: { payload: RevisionPayload; s
   return (
     <section aria-label={text.title} className="h-full overflow-auto bg-film">
       <div className="sticky left-0 flex flex-wrap items-baseline gap-x-3 gap-y-1 px-2.5 py-2">
-        <h2 className="m-0 text-base font-bold">{text.title}</h2>
+        {views}
         <span className="text-ink-2">
           {scheduleLead(document, reading)},{' '}
           {payload.engineVersion === '1' ? text.provisional : text.plusMinus}

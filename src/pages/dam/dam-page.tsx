@@ -10,6 +10,7 @@ import { DamFacts } from '#client/features/dams/components/dam-facts.tsx';
 import { PeopleList } from '#client/features/dams/components/people-panel.tsx';
 import { WaitingList } from '#client/features/dams/components/waiting-list.tsx';
 import { paths } from '#client/lib/paths.ts';
+import { compareText } from '#client/text/compare.ts';
 import { damSeepageText } from '#client/text/dam-seepage.ts';
 import { damsText as text } from '#client/text/dams.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
@@ -32,6 +33,9 @@ export function DamPage() {
           <>
             <ButtonLink look="quiet" to={paths.damSeepage(dam.id)}>
               {damSeepageText.title}
+            </ButtonLink>
+            <ButtonLink look="quiet" to={paths.compare(dam.id)}>
+              {compareText.title}
             </ButtonLink>
             <ButtonLink look="quiet" to={paths.damSettings(dam.id)}>
               {text.settings}

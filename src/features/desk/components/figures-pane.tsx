@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'react';
+import { HeadingSwitch } from '#client/components/heading-switch.tsx';
 import { exitsText } from '#client/text/exits.ts';
 import { profileText } from '#client/text/profiles.ts';
 import { scheduleText } from '#client/text/schedule.ts';
@@ -38,7 +39,7 @@ export function FiguresPane({ store, netName, onDownload, onForm, onSheet }: Fig
       }),
     [store],
   );
-  const views = <FigureViews shown={shown} onShow={setShown} />;
+  const views = <HeadingSwitch titles={TITLES} shown={shown} onShow={setShown} />;
   if (shown === 'profiles') {
     return <ProfilesPane store={store} views={views} netName={netName} onForm={onForm} onSheet={onSheet} />;
   }
@@ -59,28 +60,4 @@ export function FiguresPane({ store, netName, onDownload, onForm, onSheet }: Fig
 function viewFor({ tool, selection }: DeskState): FiguresView | null {
   if (selection.kind === 'profile' || tool === 'profile') return 'profiles';
   return selection.kind === 'readingPoint' || tool === 'readingPoint' ? 'points' : null;
-}
-
-/** The heading of the table shown, and beside it the names of the others. */
-function FigureViews({ shown, onShow }: { shown: FiguresView; onShow: (view: FiguresView) => void }) {
-  return (
-    <div className="flex flex-wrap items-baseline gap-x-3">
-      {(Object.keys(TITLES) as FiguresView[]).map((view) =>
-        view === shown ? (
-          <h2 key={view} className="m-0 text-base font-bold">
-            {TITLES[view]}
-          </h2>
-        ) : (
-          <button
-            key={view}
-            type="button"
-            className="touch text-base text-ink-2 underline decoration-rule underline-offset-4 hover:decoration-ink"
-            onClick={() => onShow(view)}
-          >
-            {TITLES[view]}
-          </button>
-        ),
-      )}
-    </div>
-  );
 }

@@ -1,17 +1,13 @@
 import { useStore } from 'zustand';
-import { Button } from '#client/components/button.tsx';
-import { CheckField } from '#client/components/field.tsx';
-import { fixedText, sentenceText, signedText } from '#client/lib/figures.ts';
 import { independentText as text } from '#client/text/independent.ts';
-import type { DifferencePicture } from '#shared/compute/beside/difference-picture.ts';
-import { STEPS } from '#shared/compute/beside/difference-steps.ts';
-import type { FlowNetDocument, SheetPoint } from '#shared/contract/document.ts';
+import type { SheetPoint } from '#shared/contract/document.ts';
 import { unitNames } from '#shared/text/unit-text.ts';
 import { isSolvedAlike } from '../model/adopt-lines.ts';
-import type { DeskChecks, IndependentResult, IndependentState } from '../model/desk-checks.ts';
+import type { DeskChecks, IndependentResult } from '../model/desk-checks.ts';
 import type { DeskStore } from '../model/desk-state.ts';
 import { AdoptLines } from './adopt-lines.tsx';
 import { FormPane } from './form-pane.tsx';
+import { SolutionQuality, SolutionSwitches, SolveControl } from './independent-parts.tsx';
 import { ExitTable, HeadTable, SeepageTable } from './independent-tables.tsx';
 import { Aside, MarginSection } from './margin-section.tsx';
 
@@ -36,59 +32,12 @@ export function IndependentPane({ store, checks, onClose, onSheet }: Independent
   return (
     <FormPane title={text.title} onClose={onClose}>
       <Aside>{text.lead}</Aside>
-      <Progress state={independent} again={result !== null} checks={checks} onPlace={lookAt} />
+      <SolveControl state={independent} again={result !== null} checks={checks} onPlace={lookAt} />
       {result && result.of !== revision ? (
         <p className="m-0 bg-doubt p-2 text-attention">{text.outOfDate}</p>
       ) : null}
       {result ? <Result {...{ result, store, checks, current }} onPlace={lookAt} /> : null}
     </FormPane>
-  );
-}
-
-function Progress({
-  state,
-  again,
-  checks,
-  onPlace,
-}: {
-  state: IndependentState;
-  again: boolean;
-  checks: DeskChecks;
-  onPlace: (at: SheetPoint) => void;
-}) {
-  const working = state.state === 'working';
-  return (
-    <div className="flex flex-col gap-2">
-      <div className="flex items-center gap-3">
-        {working ? (
-          <Button look="quiet" onClick={() => checks.cancel()}>
-            {text.cancel}
-          </Button>
-        ) : (
-          <Button look={again ? 'quiet' : 'plain'} onClick={() => checks.solve()}>
-            {again ? text.again : text.solve}
-          </Button>
-        )}
-        <span role="status">{working ? text.stages[state.stage] : ''}</span>
-      </div>
-      {state.state === 'failed' ? (
-        <div role="alert" className="bg-doubt p-2">
-          <p className="m-0 text-wrong">
-            <b className="font-semibold">{text.failed}</b> {sentenceText(state.text)}
-          </p>
-          <PlaceButton at={state.at} onPlace={onPlace} />
-        </div>
-      ) : null}
-    </div>
-  );
-}
-
-function PlaceButton({ at, onPlace }: { at: SheetPoint | null; onPlace: (at: SheetPoint) => void }) {
-  if (at === null) return null;
-  return (
-    <button type="button" className="touch text-sm underline" onClick={() => onPlace(at)}>
-      {text.showPlace}
-    </button>
   );
 }
 
@@ -105,7 +54,7 @@ function Result({ result: { beside }, store, checks, current, onPlace }: ResultP
   const document = useStore(store, (state) => state.document);
   return (
     <>
-      <Switches beside={beside} checks={checks} unit={unitNames(document.unitSystem).length} />
+      <SolutionSwitches beside={beside} checks={checks} unit={unitNames(document.unitSystem).length} />
       <AdoptLines net={beside.net} store={store} current={current} />
       <MarginSection title={text.heads}>
         <HeadTable comparison={beside.comparison} document={document} />
@@ -123,67 +72,7 @@ function Result({ result: { beside }, store, checks, current, onPlace }: ResultP
           <ExitTable exits={beside.exits} document={document} onPlace={onPlace} />
         </MarginSection>
       ) : null}
-      <Quality beside={beside} document={document} />
+      <SolutionQuality beside={beside} document={document} />
     </>
-  );
-}
-
-/** How the tints are to be read, and the greatest differences; or that there are none to draw. */
-function differencesHint(picture: DifferencePicture, unit: string): string {
-  const steps = STEPS.map((part) => text.percent(part, 1));
-  const { compared, greatestAbove, greatestBelow } = picture;
-  if (compared === 0) return text.noDifferences;
-  const parts = [greatestAbove, greatestBelow].map((found) => Math.abs(found?.part ?? 0));
-  if (Math.max(...parts) < STEPS[0]) return text.nowhere(text.percent(STEPS[0], 1));
-  const [above, below] = [greatestAbove, greatestBelow].map(
-    (found) => `${signedText(found?.head ?? 0, 2)} ${unit}`,
-  );
-  return `${text.differencesHint(steps)} ${text.greatest(above ?? '', below ?? '')}`;
-}
-
-function Switches({
-  beside,
-  checks,
-  unit,
-}: {
-  beside: IndependentResult['beside'];
-  checks: DeskChecks;
-  unit: string;
-}) {
-  const { netShown, differencesShown } = useStore(checks);
-  const { picture } = beside;
-  return (
-    <MarginSection title={text.show}>
-      <CheckField
-        label={text.showNet}
-        hint={text.showNetHint}
-        checked={netShown}
-        onChange={(event) => checks.showNet(event.target.checked)}
-      />
-      <CheckField
-        label={text.showDifferences}
-        hint={differencesHint(beside.picture, unit)}
-        disabled={picture.compared === 0}
-        checked={differencesShown && picture.compared > 0}
-        onChange={(event) => checks.showDifferences(event.target.checked)}
-      />
-    </MarginSection>
-  );
-}
-
-function Quality({ beside, document }: { beside: IndependentResult['beside']; document: FlowNetDocument }) {
-  const { net, imbalance, gap, surfaceMisfit, nodeCount, usesPhreaticLine } = beside;
-  const { length } = unitNames(document.unitSystem);
-  const channels = net.channels === null ? null : fixedText(net.channels, 2);
-  return (
-    <MarginSection title={text.net}>
-      <p className="m-0">{text.netCounts(net.drops, channels)}</p>
-      {usesPhreaticLine ? <p className="m-0 text-attention">{text.usesPhreatic}</p> : null}
-      <Aside>
-        {text.quality(text.within(imbalance), String(nodeCount))}{' '}
-        {gap === null ? '' : text.gap(text.within(gap))}{' '}
-        {surfaceMisfit === null ? '' : text.surface(`${fixedText(surfaceMisfit, 3)} ${length}`)}
-      </Aside>
-    </MarginSection>
   );
 }

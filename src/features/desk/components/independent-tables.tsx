@@ -7,6 +7,7 @@ import type {
   IndependentComparison,
 } from '#shared/compute/independent/compare-with-independent.ts';
 import type { FlowNetDocument, SheetPoint, UnitSystem } from '#shared/contract/document.ts';
+import type { NetReading } from '#shared/contract/reading.ts';
 import { DECIMALS, elevationUnit, unitNames } from '#shared/text/unit-text.ts';
 import { powerRuns } from './figure-runs.ts';
 import { Aside } from './margin-section.tsx';
@@ -15,13 +16,18 @@ import { Runs } from './runs.tsx';
 
 const percent = (part: number | null) => (part === null ? NO_FIGURE : `${signedText(100 * part, 1)} %`);
 
-/** Heads of the net and of the solution at the reading points. */
+/**
+ * Heads of the net and of the solution at the reading points. `reading`: the traced net's, where its ± is to stand
+ * beside the difference.
+ */
 export function HeadTable({
   comparison,
   document,
+  reading = null,
 }: {
   comparison: IndependentComparison;
   document: FlowNetDocument;
+  reading?: NetReading | null;
 }) {
   const { unitSystem, datum } = document;
   const level = elevationUnit(unitSystem, datum);
@@ -37,25 +43,38 @@ export function HeadTable({
           text.head.traced(level),
           text.head.independent(level),
           text.head.difference(length),
+          ...(reading ? [text.head.plusMinus(length)] : []),
           text.head.part,
         ]}
       >
-        {comparison.points.map((point) => (
-          <tr key={point.id}>
-            <RowHead strong>{point.name}</RowHead>
-            <FigureCell>{fixedText(point.traced, head)}</FigureCell>
-            <FigureCell>
-              {point.independent === null ? text.outside : fixedText(point.independent, head)}
-            </FigureCell>
-            <FigureCell>{signedText(point.difference, head)}</FigureCell>
-            <FigureCell>{percent(point.part)}</FigureCell>
-          </tr>
-        ))}
+        {comparison.points.map((point) => {
+          const plusMinus = plusMinusOf(reading, point.id);
+          const beyond = plusMinus !== null && Math.abs(point.difference ?? 0) > plusMinus;
+          return (
+            <tr key={point.id}>
+              <RowHead strong>{point.name}</RowHead>
+              <FigureCell>{fixedText(point.traced, head)}</FigureCell>
+              <FigureCell>
+                {point.independent === null ? text.outside : fixedText(point.independent, head)}
+              </FigureCell>
+              <FigureCell look={beyond ? 'font-semibold text-attention' : ''}>
+                {signedText(point.difference, head)}
+              </FigureCell>
+              {reading ? <FigureCell>{fixedText(plusMinus, head)}</FigureCell> : null}
+              <FigureCell>{percent(point.part)}</FigureCell>
+            </tr>
+          );
+        })}
       </MarginTable>
-      <Aside>{text.sign}</Aside>
+      <Aside>
+        {text.sign} {reading ? text.beyond : ''}
+      </Aside>
     </>
   );
 }
+
+const plusMinusOf = (reading: NetReading | null, id: string) =>
+  reading?.points.find((point) => point.id === id)?.totalHeadPlusMinus ?? null;
 
 /** Figures in which two computations of a seepage can be compared. */
 const SEEPAGE_FIGURES = 3;

@@ -7,6 +7,7 @@ import { ProblemNote } from '#client/components/problem-note.tsx';
 import { downloadFrom } from '#client/lib/download.ts';
 import { apiUrl } from '#client/lib/http.ts';
 import { paths } from '#client/lib/paths.ts';
+import { compareText } from '#client/text/compare.ts';
 import { deskPageText } from '#client/text/desk-page.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
 import { useCopyForLoadCase, useRenameLoadCase } from '../api/net-mutations.ts';
@@ -28,6 +29,12 @@ export function LoadCasePane({ detail, disabled, flush, onClose }: LoadCasePaneP
     await flush();
     downloadFrom(apiUrl(`/nets/${detail.net.id}/document`));
   };
+  const navigate = useNavigate();
+  // What stands beside the other net is what the server holds.
+  const compare = async () => {
+    await flush();
+    navigate(paths.compare(detail.dam.id, { kind: 'net', id: detail.net.id }));
+  };
   return (
     <FormPane title={text.title} onClose={onClose}>
       <Rename detail={detail} disabled={disabled} />
@@ -36,6 +43,10 @@ export function LoadCasePane({ detail, disabled, flush, onClose }: LoadCasePaneP
         <ButtonLink to={paths.drawing(detail.drawing.id)}>{text.drawing}</ButtonLink>
       </section>
       {detail.can.includes('net.trace') ? <Copy detail={detail} flush={flush} /> : null}
+      <section className="border-t border-rule pt-2">
+        <p className="mt-0 mb-2 text-ink-2">{compareText.compareLead}</p>
+        <Button onClick={compare}>{compareText.compareThis}</Button>
+      </section>
       <section className="border-t border-rule pt-2">
         <h3 className="m-0 text-sm font-semibold">{text.keepTitle}</h3>
         <p className="mt-0 mb-2 text-ink-2">{text.keepLead}</p>

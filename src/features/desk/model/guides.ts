@@ -58,6 +58,7 @@ export const GUIDE_OWNERS = [
   'presence',
   'carried',
   'revisionBefore',
+  'compared',
 ] as const;
 export type GuideOwner = (typeof GUIDE_OWNERS)[number];
 

@@ -13,6 +13,7 @@ import {
   type SheetFrame,
   type SheetSize,
   seenThrough,
+  sheetZoom,
   type Viewport,
   zoomAbout,
 } from './viewport.ts';
@@ -25,6 +26,8 @@ export type ViewActions = {
   zoom(factor: number, at?: ScreenPx): void;
   fit(): void;
   lookAt(at: SheetPx): void;
+  /** A place in the middle, at so many screen pixels to a sheet pixel as near as the view's bounds allow. */
+  show(at: SheetPx, screenPxPerSheetPx: number): void;
   /** Shows the sheet through a linear map, or as it is drawn. */
   seeAs(map: LinearMap | null): void;
 };
@@ -78,6 +81,12 @@ export function createViewStore(sheet: SheetSize, frame: SheetFrame | null): Vie
       set(view.widthPx === 0 ? through : fitted(through));
     },
     fit: () => set(fitted(now())),
+    show(at, screenPxPerSheetPx) {
+      const view = now();
+      const middle = screenPx(view.widthPx / 2, view.heightPx / 2);
+      const zoomed = zoomAbout(view, middle, screenPxPerSheetPx / sheetZoom(view), sheet);
+      set(keptInSight(centredOn(zoomed, at), sheet));
+    },
     lookAt(at) {
       const view = now();
       set(keptInSight(centredOn({ ...view, zoom: Math.max(view.zoom, LOOK_ZOOM) }, at), sheet));

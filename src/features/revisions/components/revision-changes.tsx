@@ -18,7 +18,6 @@ interface RevisionChangesProps {
 /** What changed since the revision before: in a few sentences, line by line, and pressures side by side. */
 export function RevisionChanges(props: RevisionChangesProps) {
   const { comparison, label, unitSystem, drawnOver, onDrawnOver } = props;
-  const moved = [...comparison.lines, ...comparison.points].filter((each) => each.facts.length > 0);
   return (
     <section aria-labelledby="changes" className="border-t border-rule px-3 py-2">
       <h2 id="changes" className="m-0 text-base font-bold">
@@ -42,18 +41,30 @@ export function RevisionChanges(props: RevisionChangesProps) {
           {text.drawOver(label)}
         </label>
       ) : null}
-      <LineChanges comparison={comparison} unitSystem={unitSystem} />
-      {moved.map((each) => (
-        <p key={each.id} className="m-0 break-words text-ink-2">
-          {each.name || text.unnamed}: {each.facts.map(changedFactText).map(sentenceText).join(' ')}
-        </p>
-      ))}
+      <ChangedThings comparison={comparison} unitSystem={unitSystem} />
       <PressureTable {...props} />
     </section>
   );
 }
 
-function LineChanges({ comparison, unitSystem }: Pick<RevisionChangesProps, 'comparison' | 'unitSystem'>) {
+type ChangedThingsProps = Pick<RevisionChangesProps, 'comparison' | 'unitSystem'>;
+
+/** Lines that changed, each with how far, and what else is otherwise of lines and points. */
+export function ChangedThings({ comparison, unitSystem }: ChangedThingsProps) {
+  const changed = [...comparison.lines, ...comparison.points].filter((each) => each.facts.length > 0);
+  return (
+    <>
+      <LineChanges comparison={comparison} unitSystem={unitSystem} />
+      {changed.map((each) => (
+        <p key={each.id} className="m-0 break-words text-ink-2">
+          {each.name || text.unnamed}: {each.facts.map(changedFactText).map(sentenceText).join(' ')}
+        </p>
+      ))}
+    </>
+  );
+}
+
+function LineChanges({ comparison, unitSystem }: ChangedThingsProps) {
   const { length } = unitNames(unitSystem);
   return (
     <ul className="m-0 list-disc pl-5">

@@ -2,6 +2,7 @@ import { Link } from 'react-router-dom';
 import { formatFullDay } from '#client/lib/dates.ts';
 import { shortName } from '#client/lib/initials.ts';
 import { paths } from '#client/lib/paths.ts';
+import { compareText } from '#client/text/compare.ts';
 import { checkText as text } from '#client/text/revisions.ts';
 import type { RevisionSummary } from '#shared/contract/revisions.ts';
 
@@ -18,10 +19,13 @@ const STATE_COLOURS: Record<RevisionSummary['state'], string> = {
 export function RevisionHistory({
   revisions,
   presentId,
+  compareWith,
 }: {
   revisions: readonly RevisionSummary[];
   /** The one shown on this page, which is not a link. */
   presentId: string | null;
+  /** Where a revision stands beside what is shown. */
+  compareWith: (revisionId: string) => string;
 }) {
   if (revisions.length === 0) return <p className="m-0 text-ink-2">{text.historyEmpty}</p>;
   const newestFirst = [...revisions].sort((a, b) => (a.sentAt < b.sentAt ? 1 : -1));
@@ -37,6 +41,15 @@ export function RevisionHistory({
           {revision.decision?.note ? (
             <span className="block break-words whitespace-pre-line">{revision.decision.note}</span>
           ) : null}
+          {revision.id === presentId ? null : (
+            <Link
+              to={compareWith(revision.id)}
+              className="touch text-sm"
+              aria-label={compareText.compareRevision(revision.label)}
+            >
+              {compareText.compare}
+            </Link>
+          )}
         </li>
       ))}
     </ul>
