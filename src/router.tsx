@@ -34,6 +34,7 @@ const publicPages = [
 const signedInPages = [
   page('/', async () => (await import('./pages/dams/dams-page.tsx')).DamsPage),
   page('/dams/new', async () => (await import('./pages/dams/new-dam-page.tsx')).NewDamPage),
+  page('/register', async () => (await import('./pages/register/register-page.tsx')).RegisterPage),
   page('/dams/:damId', async () => (await import('./pages/dam/dam-page.tsx')).DamPage),
   page(
     '/dams/:damId/settings',

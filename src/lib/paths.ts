@@ -2,6 +2,7 @@
 export const paths = {
   dams: '/',
   newDam: '/dams/new',
+  register: (damId?: string) => (damId === undefined ? '/register' : `/register?dam=${damId}`),
   dam: (damId: string) => `/dams/${damId}`,
   damSettings: (damId: string) => `/dams/${damId}/settings`,
   damActivity: (damId: string) => `/dams/${damId}/activity`,

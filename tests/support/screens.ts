@@ -72,6 +72,12 @@ export const SCREENS_OF: ReadonlyArray<{ readonly person: string; readonly scree
     person: engineer.email,
     screens: [
       { name: 'dams', path: '/', open: heading('Your dams') },
+      { name: 'register', path: '/register', open: heading('Register') },
+      {
+        name: 'register, searched',
+        path: '/register?q=blanket&sort=newest',
+        open: async (page) => page.locator('mark').first().waitFor(),
+      },
       { name: 'new dam', path: '/dams/new', open: heading(/./) },
       { name: 'dam', path: `/dams/${DAM}`, open: heading('Harrow Fen Dam') },
       { name: 'dam settings', path: `/dams/${DAM}/settings`, open: heading(/./) },

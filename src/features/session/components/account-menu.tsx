@@ -3,6 +3,7 @@ import { Menu, menuItemClass } from '#client/components/menu.tsx';
 import { initialsOf } from '#client/lib/initials.ts';
 import { paths } from '#client/lib/paths.ts';
 import { accountMenuText as text } from '#client/text/account-menu.ts';
+import { registerLinkText } from '#client/text/register-links.ts';
 import { signOut } from '../api/sign-out.ts';
 import { useSession } from '../hooks/use-session.ts';
 
@@ -26,6 +27,7 @@ export function AccountMenu() {
               {person.admin ? `, ${text.admin}` : ''}
             </span>
           </p>
+          <MenuLink to={paths.register()} label={registerLinkText.menu} onClick={close} />
           <MenuLink to={paths.account} label={text.accountTitle} onClick={close} />
           {session.can.includes('people.manage') ? (
             <MenuLink to={paths.people} label={text.people} onClick={close} />
