@@ -32,8 +32,8 @@ export const drawingRoutes: RouteRecord[] = [
     params: z.object({ damId: id }),
     query: drawingListQuery,
     reply: drawingListDto,
-    handle: async ({ deps, params, query }) => ({
-      items: await listDrawings(deps.db.manager, params.damId, query.archived === 'yes'),
+    handle: async ({ deps, params, query, actor }) => ({
+      items: await listDrawings(deps.db.manager, params.damId, query.archived === 'yes', actor.id),
     }),
   }),
   defineRoute({
@@ -57,7 +57,7 @@ export const drawingRoutes: RouteRecord[] = [
     access: onDrawing('dam.read'),
     params: drawingParams,
     reply: drawingDto,
-    handle: async ({ deps, params }) => getDrawing(deps.db.manager, params.drawingId),
+    handle: async ({ deps, params, actor }) => getDrawing(deps.db.manager, params.drawingId, actor.id),
   }),
   defineRoute({
     method: 'patch',
@@ -90,7 +90,7 @@ export const drawingRoutes: RouteRecord[] = [
         drawSheetAgain(tx, params.sheetId, body.dpi, actor),
       );
       await deps.storage.deletePrefix(oldTiles);
-      return getDrawing(deps.db.manager, drawingId);
+      return getDrawing(deps.db.manager, drawingId, actor.id);
     },
   }),
   defineRoute({

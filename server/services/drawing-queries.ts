@@ -8,23 +8,28 @@ import { shownPictures } from './rendition-queries.ts';
 import { sectionsOfSheets } from './section-queries.ts';
 import { presentSheet } from './sheet-presenter.ts';
 
-/** The drawings of a dam, newest first: those in use, or those put away. */
+/** The drawings of a dam, newest first: those in use, or those put away; with what is new in them to the reader. */
 export async function listDrawings(
   manager: EntityManager,
   damId: string,
   archived: boolean,
+  readerId: string,
 ): Promise<DrawingDto[]> {
   const drawings = await manager.find(DrawingEntity, {
     where: { damId, archivedAt: archived ? Not(IsNull()) : IsNull() },
     order: { uploadedAt: 'DESC', id: 'DESC' },
   });
-  return present(manager, drawings);
+  return present(manager, drawings, readerId);
 }
 
 /** @throws AppError not-found */
-export async function getDrawing(manager: EntityManager, drawingId: string): Promise<DrawingDto> {
+export async function getDrawing(
+  manager: EntityManager,
+  drawingId: string,
+  readerId: string,
+): Promise<DrawingDto> {
   const drawings = await manager.findBy(DrawingEntity, { id: drawingId });
-  const [drawing] = await present(manager, drawings);
+  const [drawing] = await present(manager, drawings, readerId);
   if (!drawing) throw notFound();
   return drawing;
 }
@@ -40,7 +45,11 @@ export async function originalOf(
   return { key: originalKey(sha256), fileName, mediaType };
 }
 
-async function present(manager: EntityManager, drawings: DrawingEntity[]): Promise<DrawingDto[]> {
+async function present(
+  manager: EntityManager,
+  drawings: DrawingEntity[],
+  readerId: string,
+): Promise<DrawingDto[]> {
   if (drawings.length === 0) return [];
   const drawingId = In(drawings.map((drawing) => drawing.id));
   const sheets = await manager.find(SheetEntity, { where: { drawingId }, order: { pageNumber: 'ASC' } });
@@ -50,6 +59,7 @@ async function present(manager: EntityManager, drawings: DrawingEntity[]): Promi
   const sections = await sectionsOfSheets(
     manager,
     sheets.map((sheet) => sheet.id),
+    readerId,
   );
   const shown = await shownPictures(
     manager,

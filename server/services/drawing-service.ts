@@ -72,7 +72,7 @@ export function createDrawingService({ manager, storage, clock, live, jobs }: Se
         ? announce(drawing, actor, 'drawing.archived', `put ${drawingTitle(drawing)} away`)
         : announce(drawing, actor, 'drawing.restored', `brought ${drawingTitle(drawing)} back`));
     }
-    return getDrawing(manager, drawingId);
+    return getDrawing(manager, drawingId, actor.id);
   }
 
   return {
@@ -96,7 +96,7 @@ export function createDrawingService({ manager, storage, clock, live, jobs }: Se
       await manager.insert(RenderJobEntity, { id: jobId, drawingId: drawing.id, createdAt: clock.now() });
       await jobs.enqueue(manager, 'render-drawing', jobId);
       await announce(drawing, actor, 'drawing.uploaded', `uploaded ${fileName}`);
-      return getDrawing(manager, drawing.id);
+      return getDrawing(manager, drawing.id, actor.id);
     },
 
     async change(drawingId: string, patch: z.output<typeof drawingPatch>, actor: Actor): Promise<DrawingDto> {
@@ -107,7 +107,7 @@ export function createDrawingService({ manager, storage, clock, live, jobs }: Se
         const title = drawingTitle({ ...drawing, ...patch });
         await announce(drawing, actor, 'drawing.changed', `changed the particulars of ${title}`);
       }
-      return getDrawing(manager, drawingId);
+      return getDrawing(manager, drawingId, actor.id);
     },
 
     /**
@@ -126,7 +126,7 @@ export function createDrawingService({ manager, storage, clock, live, jobs }: Se
         'drawing.again',
         `asked for ${drawingTitle(drawing)} to be prepared again`,
       );
-      return getDrawing(manager, drawingId);
+      return getDrawing(manager, drawingId, actor.id);
     },
 
     archive: (drawingId: string, actor: Actor) => setArchived(drawingId, clock.now(), actor),

@@ -4,6 +4,7 @@ import type { NetSummary } from '#shared/contract/drawings.ts';
 import type { RevisionState } from '#shared/contract/revisions.ts';
 import type { UnitSystem } from '#shared/contract/unit-system.ts';
 import { canBeRead } from './schedule-queries.ts';
+import { isUnreadBy } from './unread-notes.ts';
 
 interface SummaryRow {
   id: string;
@@ -15,6 +16,7 @@ interface SummaryRow {
   archived_at: Date | null;
   drops: number | null;
   open_notes: number;
+  unread_notes: number;
   label: string | null;
   reviewer_id: string | null;
   reviewer_name: string | null;
@@ -22,12 +24,14 @@ interface SummaryRow {
   changed_since: boolean | null;
 }
 
-/** The newest revision says where a net stands; everything before it is history. */
+/** The newest revision says where a net stands; everything before it is history. $1 = reader, null for nobody. */
 const SUMMARIES = `
   SELECT n.id, n.section_id, n.name, n.archived_at, n.change_number, n.unit_system, m.datum,
     (SELECT (e.value->>'drops')::float8 FROM document_entity e
       WHERE e.owner_id = n.id AND e.kind = 'netCount' AND NOT e.removed) AS drops,
     (SELECT count(*)::int FROM note o WHERE o.net_id = n.id AND o.state <> 'closed') AS open_notes,
+    (SELECT count(*)::int FROM note o WHERE o.net_id = n.id AND ${isUnreadBy('$1')}
+      AND EXISTS (SELECT 1 FROM membership b WHERE b.dam_id = m.id AND b.person_id = $1::uuid)) AS unread_notes,
     r.label, r.reviewer_id, p.name AS reviewer_name, n.change_number > r.change_number AS changed_since,
     revision_state(r.id) AS revision_state
   FROM net n
@@ -56,6 +60,7 @@ async function toSummary(manager: EntityManager, row: SummaryRow): Promise<NetSu
     name: row.name,
     drops: await countOf(manager, row),
     openNotes: row.open_notes,
+    ...(row.unread_notes > 0 ? { unreadNotes: row.unread_notes } : {}),
     state: row.revision_state === null ? 'draft' : STATE_OF[row.revision_state],
     revisionLabel: row.label,
     changedSinceRevision: row.changed_since ?? false,
@@ -72,14 +77,15 @@ async function countOf(manager: EntityManager, row: SummaryRow): Promise<number 
   return stands ? row.drops : null;
 }
 
-/** The nets of each section, in order of making. */
+/** The nets of each section, in order of making, with what is new in them to the reader. */
 export async function netSummariesBySection(
   manager: EntityManager,
   sectionIds: readonly string[],
+  readerId: string | null,
 ): Promise<Map<string, NetSummary[]>> {
   const rows: SummaryRow[] = await manager.query(
-    `${SUMMARIES} WHERE n.section_id = ANY($1::uuid[]) ORDER BY n.id`,
-    [sectionIds],
+    `${SUMMARIES} WHERE n.section_id = ANY($2::uuid[]) ORDER BY n.id`,
+    [readerId, sectionIds],
   );
   const bySection = new Map<string, NetSummary[]>(sectionIds.map((id) => [id, []]));
   const summaries = await Promise.all(rows.map((row) => toSummary(manager, row)));
@@ -91,7 +97,7 @@ export async function netSummariesBySection(
 
 /** One net as lists show it. @throws AppError not-found */
 export async function netSummaryOf(manager: EntityManager, netId: string): Promise<NetSummary> {
-  const rows: SummaryRow[] = await manager.query(`${SUMMARIES} WHERE n.id = $1`, [netId]);
+  const rows: SummaryRow[] = await manager.query(`${SUMMARIES} WHERE n.id = $2`, [null, netId]);
   const row = rows[0];
   if (!row) throw notFound();
   return toSummary(manager, row);

@@ -7,17 +7,21 @@ import type { SectionDto } from '#shared/contract/drawings.ts';
 import { assembleDocument } from './net-document.ts';
 import { netSummariesBySection } from './net-summaries.ts';
 
-/** The sections of the sheets with their nets, in order of making; put-away ones carry `archivedAt`. */
+/**
+ * The sections of the sheets with their nets, in order of making; put-away ones carry `archivedAt`. With a reader the
+ * nets say how many notes are new to them.
+ */
 export async function sectionsOfSheets(
   manager: EntityManager,
   sheetIds: readonly string[],
+  readerId: string | null = null,
 ): Promise<SectionDto[]> {
   if (sheetIds.length === 0) return [];
   const sections = await manager.find(SectionEntity, {
     where: { sheetId: In([...sheetIds]) },
     order: { id: 'ASC' },
   });
-  return present(manager, sections);
+  return present(manager, sections, readerId);
 }
 
 /** One section with its nets. @throws AppError not-found */
@@ -28,10 +32,14 @@ export async function sectionById(manager: EntityManager, sectionId: string): Pr
   return section;
 }
 
-async function present(manager: EntityManager, sections: SectionEntity[]): Promise<SectionDto[]> {
+async function present(
+  manager: EntityManager,
+  sections: SectionEntity[],
+  readerId: string | null = null,
+): Promise<SectionDto[]> {
   if (sections.length === 0) return [];
   const ids = sections.map((section) => section.id);
-  const nets = await netSummariesBySection(manager, ids);
+  const nets = await netSummariesBySection(manager, ids, readerId);
   const calibrated = await calibratedSections(manager, sections);
   return sections.map(({ id, sheetId, name, chainage, frame, archivedAt }) => ({
     id,

@@ -4,6 +4,7 @@ import { sectionTitle } from '#shared/text/section-title.ts';
 import { drawingTitle } from './drawing-title.ts';
 import { placeOfNet } from './net-place.ts';
 import { readingIfAny } from './schedule-queries.ts';
+import { isUnreadBy } from './unread-notes.ts';
 
 export type WaitingItem = WaitingDto['items'][number];
 
@@ -28,8 +29,14 @@ interface RevisionRow extends NetRow {
   person_name: string;
 }
 interface NotesRow extends NetRow {
+  note_id: string;
+  /** Notes that wait. */
+  waiting: number;
+}
+interface AnswerRow extends NotesRow {
   to_answer: number;
   answered: number;
+  must: number;
 }
 
 /** Nets in use on the reader's dams, with the newest revision of each. $1 = reader. */
@@ -50,7 +57,8 @@ const titleOf = (row: NetRow) => `${sectionTitle(row.section_name)}, ${row.net_n
 function itemOf(
   kind: WaitingItem['kind'],
   row: NetRow,
-  words: { text: string; detail?: string; revisionId?: string },
+  words: Pick<WaitingItem, 'text'> &
+    Partial<Pick<WaitingItem, 'detail' | 'revisionId' | 'noteId' | 'dueOn' | 'mustAnswer'>>,
 ): WaitingItem {
   const drawing = drawingTitle({ number: row.number, title: row.title, fileName: row.file_name });
   return {
@@ -62,6 +70,9 @@ function itemOf(
     drawingId: row.drawing_id,
     netId: row.net_id,
     revisionId: words.revisionId ?? null,
+    noteId: words.noteId ?? null,
+    dueOn: words.dueOn ?? null,
+    mustAnswer: words.mustAnswer ?? false,
     at: row.at.toISOString(),
   };
 }
@@ -78,8 +89,9 @@ async function toCheck(manager: EntityManager, personId: string): Promise<Waitin
   return rows.map((row) =>
     itemOf('check', row, {
       text: `Check revision ${row.label} of ${titleOf(row)}`,
-      detail: `sent by ${row.person_name}${row.due_on ? `, due ${row.due_on}` : ''}`,
+      detail: `sent by ${row.person_name}`,
       revisionId: row.revision_id,
+      dueOn: row.due_on,
     }),
   );
 }
@@ -103,27 +115,97 @@ async function toRevise(manager: EntityManager, personId: string): Promise<Waiti
   );
 }
 
-/** Notes of others on what the reader drew, and the reader's own that somebody answered; one item for each net. */
+/** A note `o` of somebody else on what the reader drew that is open, or the reader's own that somebody answered. */
+const TO_ANSWER = `((o.state = 'open' AND o.created_by <> $1 AND ${DREW}) OR (o.state = 'answered' AND o.created_by = $1))`;
+/** An entry `e` of a note names the reader, who did not write it. */
+const NAMES_READER = `e.named @> ARRAY[$1::uuid] AND e.author_id <> $1`;
+const NEWEST_NOTE = '(array_agg(o.id ORDER BY o.created_at DESC))[1] AS note_id';
+
+/** One item for each net. */
 async function toAnswer(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
-  const rows: NotesRow[] = await manager.query(
-    `SELECT ${NET_COLUMNS}, o.at, o.to_answer, o.answered
+  const rows: AnswerRow[] = await manager.query(
+    `SELECT ${NET_COLUMNS}, a.*
       ${NETS} JOIN LATERAL (
-        SELECT max(t.created_at) AS at,
-          count(*) FILTER (WHERE t.state = 'open')::int AS to_answer,
-          count(*) FILTER (WHERE t.state = 'answered')::int AS answered
-        FROM note t WHERE t.net_id = n.id
-          AND ((t.state = 'open' AND t.created_by <> $1 AND ${DREW}) OR (t.state = 'answered' AND t.created_by = $1))
-      ) o ON o.at IS NOT NULL
+        SELECT max(o.created_at) AS at, ${NEWEST_NOTE}, count(*)::int AS waiting,
+          count(*) FILTER (WHERE o.state = 'open')::int AS to_answer,
+          count(*) FILTER (WHERE o.state = 'answered')::int AS answered,
+          count(*) FILTER (WHERE o.state = 'open' AND o.must_answer_at IS NOT NULL)::int AS must
+        FROM note o WHERE o.net_id = n.id AND ${TO_ANSWER}
+      ) a ON a.at IS NOT NULL
       WHERE m.person_id = $1`,
     [personId],
   );
-  return rows.map((row) => itemOf('answer', row, { text: notesText(row), detail: row.net_name }));
+  return rows.map((row) =>
+    itemOf('answer', row, {
+      text: answerText(row),
+      detail: [row.net_name, mustText(row)].filter(Boolean).join(', '),
+      noteId: row.note_id,
+      mustAnswer: row.must > 0,
+    }),
+  );
 }
 
-function notesText({ to_answer: open, answered, section_name: name }: NotesRow): string {
+function answerText({ to_answer: open, answered, section_name: name }: AnswerRow): string {
   const on = sectionTitle(name);
   if (open > 0) return `Answer ${open === 1 ? 'a note' : `${open} notes`} on ${on}`;
   return `Read the answer to ${answered === 1 ? 'your note' : `${answered} notes of yours`} on ${on}`;
+}
+
+const mustText = ({ must, to_answer: open }: AnswerRow) =>
+  must === 0 ? '' : `${open === 1 ? 'it' : must} must be answered before acceptance`;
+
+/** Notes that name the reader, until the reader has written in them or read the answer of somebody else. */
+async function namedIn(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const rows: Array<NotesRow & { author: string }> = await manager.query(
+    `SELECT ${NET_COLUMNS}, a.*
+      ${NETS} JOIN LATERAL (
+        SELECT max(e.created_at) AS at, ${NEWEST_NOTE}, count(DISTINCT o.id)::int AS waiting,
+          (array_agg(p.name ORDER BY e.created_at DESC))[1] AS author
+        FROM note o JOIN note_entry e ON e.note_id = o.id JOIN person p ON p.id = e.author_id
+        WHERE o.net_id = n.id AND ${NAMES_READER} AND o.state <> 'closed'
+          AND NOT (o.state = 'answered' AND NOT ${isUnreadBy('$1')})
+          AND NOT EXISTS (SELECT 1 FROM note_entry l
+            WHERE l.note_id = o.id AND l.author_id = $1 AND (l.created_at, l.id) > (e.created_at, e.id))
+      ) a ON a.at IS NOT NULL
+      WHERE m.person_id = $1`,
+    [personId],
+  );
+  return rows.map((row) => {
+    const notes = row.waiting === 1 ? 'the note that names' : `${row.waiting} notes that name`;
+    return itemOf('named', row, {
+      text: `Answer ${notes} you on ${sectionTitle(row.section_name)}`,
+      detail: `${row.net_name}, by ${row.author}`,
+      noteId: row.note_id,
+    });
+  });
+}
+
+/**
+ * What is new in notes on nets in which the reader takes part, by drawing, checking or writing there, and is not told
+ * of as something to answer.
+ */
+async function toRead(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
+  const rows: NotesRow[] = await manager.query(
+    `SELECT ${NET_COLUMNS}, a.*
+      ${NETS} JOIN LATERAL (
+        SELECT max(o.created_at) AS at, ${NEWEST_NOTE}, count(*)::int AS waiting
+        FROM note o WHERE o.net_id = n.id AND o.state <> 'closed' AND NOT ${TO_ANSWER} AND ${isUnreadBy('$1')}
+          AND NOT EXISTS (SELECT 1 FROM note_entry e WHERE e.note_id = o.id AND ${NAMES_READER})
+          AND $1 <> (SELECT e.author_id FROM note_entry e WHERE e.note_id = o.id
+            ORDER BY e.created_at DESC, e.id DESC LIMIT 1)
+      ) a ON a.at IS NOT NULL
+      WHERE m.person_id = $1 AND (r.reviewer_ids @> ARRAY[$1::uuid] OR ${DREW} OR EXISTS (
+        SELECT 1 FROM note o JOIN note_entry e ON e.note_id = o.id WHERE o.net_id = n.id AND e.author_id = $1))
+      ORDER BY a.at DESC LIMIT ${MOST_OF_A_KIND}`,
+    [personId],
+  );
+  return rows.map((row) =>
+    itemOf('unread', row, {
+      text: `Read ${row.waiting === 1 ? 'what is new in a note' : `what is new in ${row.waiting} notes`} on ${sectionTitle(row.section_name)}`,
+      detail: row.net_name,
+      noteId: row.note_id,
+    }),
+  );
 }
 
 /** What the reader draws and has not sent yet, as far as its schedule gives no figures. */
@@ -167,14 +249,27 @@ async function toBegin(manager: EntityManager, personId: string): Promise<Waitin
     drawingId: row.drawing_id,
     netId: null,
     revisionId: null,
+    noteId: null,
+    dueOn: null,
+    mustAnswer: false,
     at: row.at.toISOString(),
   }));
 }
 
-/** What waits for a person over all their dams, newest first. */
+/** What has a day comes first, the nearest before the others; then what must be answered; then the newest. */
+function byUrgency(a: WaitingItem, b: WaitingItem): number {
+  const LATER = '9999';
+  return (
+    (a.dueOn ?? LATER).localeCompare(b.dueOn ?? LATER) ||
+    Number(b.mustAnswer) - Number(a.mustAnswer) ||
+    b.at.localeCompare(a.at)
+  );
+}
+
+/** What waits for a person over all their dams, most urgent first. */
 export async function waitingFor(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
-  const kinds = [toCheck, toRevise, toAnswer, toFinish, toBegin];
+  const kinds = [toCheck, toRevise, toAnswer, namedIn, toRead, toFinish, toBegin];
   const items: WaitingItem[] = [];
   for (const read of kinds) items.push(...(await read(manager, personId)));
-  return items.sort((a, b) => (a.at < b.at ? 1 : -1));
+  return items.sort(byUrgency);
 }

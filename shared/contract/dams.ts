@@ -61,11 +61,14 @@ export const eventDto = z.object({
 });
 export type EventDto = z.infer<typeof eventDto>;
 
-/** `GET /waiting`: what waits for the reader, newest first. */
+/**
+ * `GET /waiting`: what waits for the reader: first what has a day, then what must be answered before acceptance, then the
+ * newest.
+ */
 export const waitingDto = z.object({
   items: z.array(
     z.object({
-      kind: z.enum(['check', 'answer', 'returned', 'calibrate', 'trace']),
+      kind: z.enum(['check', 'answer', 'named', 'unread', 'returned', 'calibrate', 'trace']),
       text: z.string(),
       detail: z.string(),
       damId: id,
@@ -73,6 +76,12 @@ export const waitingDto = z.object({
       drawingId: z.nullable(id),
       netId: z.nullable(id),
       revisionId: z.nullable(id),
+      /** The newest of the notes that wait. */
+      noteId: z.nullable(id),
+      /** Day by which the check is due. */
+      dueOn: z.nullable(z.iso.date()),
+      /** Of notes: a reviewer wants an answer before acceptance. */
+      mustAnswer: z.boolean(),
       at: timestamp,
     }),
   ),

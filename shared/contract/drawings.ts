@@ -59,6 +59,8 @@ export const netSummary = z.object({
   /** Drops of a net that can be read; null while it is not finished, even if a count was stated. */
   drops: z.nullable(z.number()),
   openNotes: z.number(),
+  /** Notes in which others wrote what the reader has not seen; absent where there are none. */
+  unreadNotes: z.optional(z.number()),
   /** Derived from the ledger: never sent, waiting for a reviewer, accepted, returned. */
   state: z.enum(['draft', 'sent', 'accepted', 'returned']),
   revisionLabel: z.nullable(z.string()),

@@ -30,8 +30,6 @@ const en = {
   showPutAway: 'Show what was put away',
   hidePutAway: 'Show what is in use',
   putAwayMark: 'put away',
-  waiting: 'Waiting for you',
-  nothingWaits: 'Nothing waits for you.',
   role: (role: DamRole) => ROLE_NAMES[role],
   roleTask: (role: DamRole) => ROLE_TASKS[role],
   roles: (roles: readonly DamRole[]) => roles.map((role) => ROLE_NAMES[role]).join(', '),

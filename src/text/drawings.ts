@@ -82,6 +82,7 @@ const en = {
   needsKnownPoints: 'Known points needed',
   toScale: 'To scale, not traced',
   dropsOf: (count: number) => `${plainText(count)} drops`,
+  notesUnread: (count: number) => `${plainText(count)} new to you`,
   notesOpen: (count: number) => plural(count, 'note open', 'notes open'),
   notRendered: 'This file could not be used.',
   prepareAgain: 'Prepare again',

@@ -4,7 +4,7 @@ import { RenderJobEntity, SheetEntity } from '#server/entities/drawing-entity.ts
 import type { DamRole } from '#shared/contract/actions.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { addFinishedNet, addNet, addSheet, openNet } from '#tests/support/net-fixture.ts';
-import { reasonsFor, SIGNATURE } from '#tests/support/revision-fixture.ts';
+import { readyToDecide, reasonsFor, SIGNATURE } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
@@ -27,12 +27,32 @@ interface Waiting {
   netId: string | null;
   revisionId: string | null;
   drawingId: string | null;
+  noteId: string | null;
+  dueOn: string | null;
+  mustAnswer: boolean;
 }
 const waitingFor = async (caller: Caller): Promise<Waiting[]> =>
   (await caller.get('/waiting').expect(200)).body.items;
 const kindsFor = async (caller: Caller) => (await waitingFor(caller)).map((item) => item.kind);
 
-async function sent() {
+const note = (id: string, text: string) => ({ id, anchor: { on: 'place', at: [1, 1] }, text });
+
+/** Another section on the sheet of a dam. */
+async function addSectionOf(damId: string, caller: Caller) {
+  const sheet = await app.db
+    .getRepository(SheetEntity)
+    .createQueryBuilder('s')
+    .innerJoin('drawing', 'd', 'd.id = s.drawing_id')
+    .where('d.dam_id = :damId', { damId })
+    .getOneOrFail();
+  const sectionId = uuidv7();
+  await caller
+    .post(`/sheets/${sheet.id}/sections`, { id: sectionId, name: 'C–C', chainage: '', frame: null })
+    .expect(201);
+  return { sectionId };
+}
+
+async function sent(due: { dueOn?: string } = {}) {
   const place = await addFinishedNet(app);
   const reviewer = await addPerson(place.damId, 'Remi Okafor', 'reviewer');
   const revisionId = uuidv7();
@@ -43,6 +63,7 @@ async function sent() {
     message: '',
     changeNumber,
     reasons: await reasonsFor(place.caller, place.netId),
+    ...due,
   };
   await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
   return { ...place, reviewer, revisionId };
@@ -57,6 +78,7 @@ describe('what waits', () => {
     expect(item?.text).toMatch(/^Check revision A of Section /);
     expect(await waitingFor(second.caller)).toEqual([]);
     const decision = { decision: 'returned', note: 'Line 4 crosses the drain.', ...SIGNATURE };
+    await readyToDecide(reviewer.caller, revisionId);
     await reviewer.caller.post(`/revisions/${revisionId}/decision`, decision).expect(201);
     expect(await waitingFor(reviewer.caller)).toEqual([]);
     const back = (await waitingFor(caller)).find((each) => each.kind === 'returned');
@@ -77,8 +99,7 @@ describe('what waits', () => {
     const { damId, netId, caller } = await addFinishedNet(app);
     const tove = await addPerson(damId, 'Tove Lind', 'colleague');
     const noteId = uuidv7();
-    const note = { id: noteId, anchor: { on: 'place', at: [1, 1] }, text: 'Is this the new piezometer?' };
-    await tove.caller.post(`/nets/${netId}/notes`, note).expect(201);
+    await tove.caller.post(`/nets/${netId}/notes`, note(noteId, 'Is this the new piezometer?')).expect(201);
     const [item] = await waitingFor(caller);
     expect(item).toMatchObject({ kind: 'answer', netId });
     expect(item?.text).toMatch(/^Answer a note on Section /);
@@ -115,5 +136,75 @@ describe('what waits', () => {
     expect(await waitingFor(caller)).toMatchObject([
       { kind: 'calibrate', text: 'Put HF-114 to scale', drawingId, netId: null },
     ]);
+  });
+
+  it('for a reviewer has its day, and what has a day stands first', async () => {
+    const { netId, reviewer, revisionId, caller } = await sent({ dueOn: '2099-03-01' });
+    await readyToDecide(reviewer.caller, revisionId);
+    const noteId = uuidv7();
+    await reviewer.caller.post(`/nets/${netId}/notes`, note(noteId, 'Look at line 4.')).expect(201);
+    await caller.post(`/notes/${noteId}/answers`, { id: uuidv7(), text: 'Done.' }).expect(201);
+    const items = await waitingFor(reviewer.caller);
+    expect(items.map(({ kind, dueOn }) => [kind, dueOn])).toEqual([
+      ['check', '2099-03-01'],
+      ['answer', null],
+    ]);
+  });
+
+  it('for who drew tells which notes must be answered before acceptance, before others', async () => {
+    const { netId, reviewer, revisionId, caller, damId } = await sent();
+    await readyToDecide(reviewer.caller, revisionId);
+    const [must, other] = [uuidv7(), uuidv7()];
+    await reviewer.caller.post(`/nets/${netId}/notes`, note(must, 'Why so steep?')).expect(201);
+    await reviewer.caller.put(`/notes/${must}/must-answer`).expect(200);
+    const second = uuidv7();
+    await caller
+      .post(`/sections/${(await addSectionOf(damId, caller)).sectionId}/nets`, { id: second, name: 'Flood' })
+      .expect(201);
+    await reviewer.caller.post(`/nets/${second}/notes`, note(other, 'And here?')).expect(201);
+    const items = (await waitingFor(caller)).filter(({ kind }) => kind === 'answer');
+    expect(items.map(({ netId: of, mustAnswer, noteId }) => [of, mustAnswer, noteId])).toEqual([
+      [netId, true, must],
+      [second, false, other],
+    ]);
+    expect(items[0]?.detail).toContain('it must be answered before acceptance');
+  });
+
+  it('for somebody named in a note is that note, until they have written there or read another’s answer', async () => {
+    const { damId, netId, caller } = await addFinishedNet(app);
+    const tove = await addPerson(damId, 'Tove Lind', 'colleague');
+    const [asked, told] = [uuidv7(), uuidv7()];
+    await caller.post(`/nets/${netId}/notes`, note(asked, '@Tove Lind is this the new tip?')).expect(201);
+    const [item] = await waitingFor(tove.caller);
+    expect(item).toMatchObject({ kind: 'named', netId, noteId: asked });
+    expect(item?.text).toBe('Answer the note that names you on Section B–B');
+    expect(item?.detail).toBe('HF-114, Full supply, by Iris Marsh');
+    // To have read it is not to have answered it.
+    await tove.caller.put(`/notes/${asked}/read`, { entries: 1 }).expect(200);
+    expect(await kindsFor(tove.caller)).toEqual(['named']);
+    await tove.caller.post(`/notes/${asked}/answers`, { id: uuidv7(), text: 'It is.' }).expect(201);
+    expect(await kindsFor(tove.caller)).toEqual([]);
+
+    const remi = await addPerson(damId, 'Remi Okafor', 'reviewer');
+    await caller.post(`/nets/${netId}/notes`, note(told, '@Tove Lind or somebody else?')).expect(201);
+    await remi.caller.post(`/notes/${told}/answers`, { id: uuidv7(), text: 'From the log.' }).expect(201);
+    expect(await kindsFor(tove.caller)).toEqual(['named']);
+    await tove.caller.put(`/notes/${told}/read`, { entries: 2 }).expect(200);
+    expect(await kindsFor(tove.caller)).toEqual([]);
+  });
+
+  it('for who takes part in a net is what is new in notes there, until it is read', async () => {
+    const { damId, netId, caller } = await addFinishedNet(app);
+    const tove = await addPerson(damId, 'Tove Lind', 'colleague');
+    const remi = await addPerson(damId, 'Remi Okafor', 'reviewer');
+    const [own, others] = [uuidv7(), uuidv7()];
+    await caller.post(`/nets/${netId}/notes`, note(others, 'The scan is stretched.')).expect(201);
+    expect(await kindsFor(tove.caller)).toEqual([]);
+    await tove.caller.post(`/nets/${netId}/notes`, note(own, 'Where is the drain?')).expect(201);
+    const [item] = await waitingFor(tove.caller);
+    expect(item).toMatchObject({ kind: 'unread', netId, noteId: others });
+    expect(await kindsFor(remi.caller)).toEqual([]);
+    await tove.caller.put(`/notes/${others}/read`, { entries: 1 }).expect(200);
+    expect(await kindsFor(tove.caller)).toEqual([]);
   });
 });

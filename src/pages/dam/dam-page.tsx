@@ -13,6 +13,8 @@ import { paths } from '#client/lib/paths.ts';
 import { compareText } from '#client/text/compare.ts';
 import { damSeepageText } from '#client/text/dam-seepage.ts';
 import { damsText as text } from '#client/text/dams.ts';
+import { registerLinkText } from '#client/text/register-links.ts';
+import { waitingText } from '#client/text/waiting.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { useDamLive } from '../use-dam-live.ts';
@@ -31,6 +33,9 @@ export function DamPage() {
         lead={<DamFacts dam={dam} />}
         action={
           <>
+            <ButtonLink look="quiet" to={paths.register(dam.id)}>
+              {registerLinkText.ofDam}
+            </ButtonLink>
             <ButtonLink look="quiet" to={paths.damSeepage(dam.id)}>
               {damSeepageText.title}
             </ButtonLink>
@@ -58,7 +63,7 @@ export function DamPage() {
 function SidePanels({ dam }: { dam: DamDto }) {
   return (
     <div className="flex flex-col gap-4">
-      <Panel title={text.waiting}>
+      <Panel title={waitingText.title}>
         <Part>
           <WaitingList damId={dam.id} />
         </Part>

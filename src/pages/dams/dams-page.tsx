@@ -8,6 +8,8 @@ import { WaitingList } from '#client/features/dams/components/waiting-list.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { paths } from '#client/lib/paths.ts';
 import { damsText as text } from '#client/text/dams.ts';
+import { registerLinkText as registerText } from '#client/text/register-links.ts';
+import { waitingText } from '#client/text/waiting.ts';
 import { AppFrame } from '../app-frame.tsx';
 
 export function DamsPage() {
@@ -17,11 +19,23 @@ export function DamsPage() {
   const canCreate = session.can.includes('dam.create');
   return (
     <AppFrame trail={[{ label: text.title }]}>
-      <Page title={text.title} heading={text.yours}>
-        <div className="grid grid-cols-[minmax(0,1fr)] gap-7 lg:grid-cols-[minmax(0,1fr)_330px]">
+      <Page
+        title={text.title}
+        heading={text.yours}
+        action={
+          <ButtonLink look="quiet" to={paths.register()}>
+            {registerText.open}
+          </ButtonLink>
+        }
+      >
+        <div className="flex flex-col gap-6">
+          <Panel title={waitingText.title} look="register">
+            <Part>
+              <WaitingList wide />
+            </Part>
+          </Panel>
           <Panel
             look="register"
-            className="self-start"
             title={archived ? `${text.title}, ${text.putAwayMark}` : text.title}
             action={
               canCreate ? (
@@ -39,11 +53,6 @@ export function DamsPage() {
                 {archived ? text.hidePutAway : text.showPutAway}
               </Link>
             </p>
-          </Panel>
-          <Panel title={text.waiting} className="self-start">
-            <Part>
-              <WaitingList />
-            </Part>
           </Panel>
         </div>
       </Page>

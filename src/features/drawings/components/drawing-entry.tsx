@@ -142,13 +142,21 @@ function SectionRow({ row: { section, net }, drawingId }: { row: Row; drawingId:
 
 /** What stands out about a net: open notes, who checks it, how it was decided. */
 function NetMark({ net }: { net: NetSummary }) {
-  if (net.openNotes > 0)
-    return <span className="font-semibold text-attention">{text.notesOpen(net.openNotes)}</span>;
+  if (net.openNotes > 0 || net.unreadNotes) return <NotesMark net={net} />;
   if (net.state === 'accepted' && !net.changedSinceRevision)
     return <span className="font-semibold text-good">{capitalised(netStateText(net))}</span>;
   if (net.state === 'accepted' || net.state === 'returned')
     return <span className="font-semibold text-attention">{capitalised(netStateText(net))}</span>;
   return net.state === 'sent' && net.reviewer ? <span>{shortName(net.reviewer.name)}</span> : null;
+}
+
+/** Notes open, and those in which something is new to the reader. */
+function NotesMark({ net: { openNotes, unreadNotes = 0 } }: { net: NetSummary }) {
+  const words = [
+    openNotes > 0 ? text.notesOpen(openNotes) : '',
+    unreadNotes > 0 ? text.notesUnread(unreadNotes) : '',
+  ];
+  return <span className="font-semibold text-attention">{words.filter(Boolean).join(', ')}</span>;
 }
 
 const capitalised = (words: string) => words.charAt(0).toLocaleUpperCase() + words.slice(1);

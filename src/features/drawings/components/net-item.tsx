@@ -36,6 +36,9 @@ export function NetItem({ net, canTrace, canArchive }: NetItemProps) {
           {net.drops === null ? '' : `, ${text.dropsOf(net.drops)}`}
           {net.openNotes > 0 ? `, ${text.notesOpen(net.openNotes)}` : ''}
           {isAway ? `, ${text.putAwayMark}` : ''}
+          {net.unreadNotes ? (
+            <b className="block font-semibold text-attention">{text.notesUnread(net.unreadNotes)}</b>
+          ) : null}
         </span>
         <ProblemNote error={archive.error} />
       </div>
