@@ -8,7 +8,7 @@ import { createInvitationService } from '#server/services/invitation-service.ts'
 import { getMember, listMembers } from '#server/services/member-queries.ts';
 import { createMemberService } from '#server/services/member-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
-import { id, pageOf, pageQuery } from '#shared/contract/common.ts';
+import { id, pageOf } from '#shared/contract/common.ts';
 import {
   damDto,
   damInput,
@@ -21,6 +21,7 @@ import {
   memberListDto,
   memberRolesInput,
 } from '#shared/contract/dams.ts';
+import { eventListQuery } from '#shared/contract/events.ts';
 
 const damParams = z.object({ damId: id });
 const memberParams = z.object({ damId: id, personId: id });
@@ -104,9 +105,9 @@ const dams: RouteRecord[] = [
     path: '/dams/:damId/events',
     access: onDam('dam.read'),
     params: damParams,
-    query: pageQuery,
+    query: eventListQuery,
     reply: pageOf(eventDto),
-    handle: ({ deps, params, query }) => listEvents(deps.db.manager, params.damId, query.cursor),
+    handle: ({ deps, params, query }) => listEvents(deps.db.manager, params.damId, query.cursor, query),
   }),
 ];
 

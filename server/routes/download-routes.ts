@@ -7,7 +7,8 @@ import { netDxf, revisionDxf } from '#server/services/dxf-queries.ts';
 import { eventsFile } from '#server/services/event-export.ts';
 import type { Download } from '#server/services/schedule-queries.ts';
 import { id } from '#shared/contract/common.ts';
-import { csvQuery, markOf } from '#shared/contract/downloads.ts';
+import { markOf } from '#shared/contract/downloads.ts';
+import { eventFileQuery } from '#shared/contract/events.ts';
 
 function sendDxf(res: Response, { fileName, text }: Download): void {
   res.setHeader('Cache-Control', 'no-store');
@@ -43,9 +44,9 @@ export const downloadRoutes: RouteRecord[] = [
     path: '/dams/:damId/events.csv',
     access: { who: 'dam', action: 'dam.read', target: 'dam' },
     params: z.object({ damId: id }),
-    query: csvQuery,
+    query: eventFileQuery,
     handle: async ({ deps, params, query, res }) => {
-      const { fileName, parts } = await eventsFile(deps.db.manager, params.damId, markOf(query));
+      const { fileName, parts } = await eventsFile(deps.db.manager, params.damId, query, markOf(query));
       res.setHeader('Cache-Control', 'no-store');
       res.attachment(fileName).type('text/csv; charset=utf-8');
       await sendParts(parts, res);

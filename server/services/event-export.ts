@@ -1,10 +1,12 @@
 import type { EntityManager } from 'typeorm';
 import { DamEntity } from '#server/entities/dam-entity.ts';
 import { notFound } from '#server/errors/app-error.ts';
+import type { EventFilter } from '#shared/contract/events.ts';
 import { BYTE_ORDER_MARK, type CsvCell, csvText } from '#shared/text/csv.ts';
 import { cleanFileName } from '#shared/text/file-name.ts';
 import type { DecimalMark } from '#shared/text/number-text.ts';
 import { type Position, positionTime } from './cursor.ts';
+import { eventCondition } from './event-filter.ts';
 
 /** Rows read at once, so that the history of decades needs no more memory than that of a day. */
 const READ_AT_ONCE = 1000;
@@ -22,22 +24,34 @@ interface EventRow {
   net: string | null;
 }
 
-/** Everything that happened on a dam as CSV, oldest first, made while it is sent. @throws AppError not-found */
+/**
+ * What happened on a dam as CSV, oldest first, as far as it is asked for, made while it is sent.
+ * @throws AppError not-found
+ */
 export async function eventsFile(
   manager: EntityManager,
   damId: string,
+  filter: EventFilter,
   mark: DecimalMark,
 ): Promise<{ fileName: string; parts: AsyncGenerator<string> }> {
   const dam = await manager.findOneBy(DamEntity, { id: damId });
   if (!dam) throw notFound();
-  return { fileName: cleanFileName(`${dam.name} activity.csv`), parts: csvParts(manager, damId, mark) };
+  return {
+    fileName: cleanFileName(`${dam.name} activity.csv`),
+    parts: csvParts(manager, damId, filter, mark),
+  };
 }
 
-async function* csvParts(manager: EntityManager, damId: string, mark: DecimalMark): AsyncGenerator<string> {
+async function* csvParts(
+  manager: EntityManager,
+  damId: string,
+  filter: EventFilter,
+  mark: DecimalMark,
+): AsyncGenerator<string> {
   yield BYTE_ORDER_MARK + csvText([HEAD], mark);
   let after: Position | null = null;
   for (;;) {
-    const rows: EventRow[] = await readAfter(manager, damId, after);
+    const rows: EventRow[] = await readAfter(manager, damId, after, filter);
     const last = rows.at(-1);
     if (!last) return;
     yield csvText(rows.map(cellsOf), mark);
@@ -45,7 +59,14 @@ async function* csvParts(manager: EntityManager, damId: string, mark: DecimalMar
   }
 }
 
-function readAfter(manager: EntityManager, damId: string, after: Position | null): Promise<EventRow[]> {
+function readAfter(
+  manager: EntityManager,
+  damId: string,
+  after: Position | null,
+  filter: EventFilter,
+): Promise<EventRow[]> {
+  const values: unknown[] = [damId, after?.at ?? null, after?.id ?? null];
+  const wanted = eventCondition(filter, values);
   return manager.query(
     `SELECT e.id, e.at, ${positionTime('e.at')} AS position, p.name AS person, e.text, e.type,
         d.number AS drawing, c.name AS section, n.name AS net
@@ -55,8 +76,9 @@ function readAfter(manager: EntityManager, damId: string, after: Position | null
       LEFT JOIN section c ON c.id = n.section_id
       LEFT JOIN drawing d ON d.id = e.drawing_id
       WHERE e.dam_id = $1 AND ($2::timestamptz IS NULL OR (e.at, e.id) > ($2::timestamptz, $3::uuid))
+        AND ${wanted}
       ORDER BY e.at, e.id LIMIT ${READ_AT_ONCE}`,
-    [damId, after?.at ?? null, after?.id ?? null],
+    values,
   );
 }
 

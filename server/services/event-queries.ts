@@ -1,7 +1,9 @@
 import type { EntityManager } from 'typeorm';
 import type { EventDto } from '#shared/contract/dams.ts';
+import type { EventFilter } from '#shared/contract/events.ts';
 import { PAGE_SIZE } from '#shared/contract/limits.ts';
 import { fromCursor, type Position, positionTime, toCursor } from './cursor.ts';
+import { eventCondition } from './event-filter.ts';
 
 interface EventRow {
   id: string;
@@ -22,14 +24,18 @@ async function readBefore(
   manager: EntityManager,
   damId: string | null,
   before: Position | null,
+  filter: EventFilter,
 ): Promise<EventRow[]> {
+  const values: unknown[] = [damId, before?.at ?? null, before?.id ?? null];
+  const wanted = eventCondition(filter, values);
   return manager.query(
     `SELECT e.id, e.type, e.text, e.person_id, p.name AS person_name, e.drawing_id, e.net_id, e.at,
         ${positionTime('e.at')} AS position
       FROM event e LEFT JOIN person p ON p.id = e.person_id
       WHERE ${damId === null ? '$1::uuid IS NULL AND e.dam_id IS NULL' : 'e.dam_id = $1'} AND ($2::timestamptz IS NULL OR (e.at, e.id) < ($2::timestamptz, $3::uuid))
+        AND ${wanted}
       ORDER BY e.at DESC, e.id DESC LIMIT ${READ_AT_ONCE}`,
-    [damId, before?.at ?? null, before?.id ?? null],
+    values,
   );
 }
 
@@ -55,8 +61,9 @@ export async function listEvents(
   manager: EntityManager,
   damId: string | null,
   cursor: string | undefined,
+  filter: EventFilter = {},
 ): Promise<{ items: EventDto[]; nextCursor: string | null }> {
-  const rows = await readBefore(manager, damId, cursor ? fromCursor(cursor) : null);
+  const rows = await readBefore(manager, damId, cursor ? fromCursor(cursor) : null, filter);
   const items: EventDto[] = [];
   let last: EventRow | null = null;
   for (const row of rows) {

@@ -1,7 +1,8 @@
 import DxfParser from 'dxf-parser';
+import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { addFinishedNet, addNet, openNet } from '#tests/support/net-fixture.ts';
-import { beginLine, sentRevision } from '#tests/support/revision-fixture.ts';
+import { addRolePerson, beginLine, sentRevision } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 
 let app: TestApp;
@@ -70,5 +71,48 @@ describe('downloads', () => {
     expect(times).toEqual([...times].sort());
     expect(answer.text).not.toMatch(/(^|[,"])=HYPERLINK/m);
     expect(netId).toBeTruthy();
+  });
+
+  it('of the activity hold what the list shows: of a person, of a kind, of some days', async () => {
+    const { caller, damId, netId } = await addFinishedNet(app);
+    const remi = await addRolePerson(app, damId, 'Remi Okafor', 'reviewer');
+    const note = { id: uuidv7(), anchor: { on: 'drawing' }, text: 'Why so steep?' };
+    await remi.caller.post(`/nets/${netId}/notes`, note).expect(201);
+    const later = new Date(Date.now() + 60_000).toISOString();
+    for (const [query, kinds] of [
+      [`person=${remi.person.id}`, ['note.written']],
+      ['about=notes', ['note.written']],
+      [`about=notes&until=${later}&person=${remi.person.id}`, ['note.written']],
+      [`from=${later}`, []],
+      ['about=checking', []],
+    ] as const) {
+      const { body } = await caller.get(`/dams/${damId}/events?${query}`).expect(200);
+      expect(body.items.map(({ type }: { type: string }) => type)).toEqual(kinds);
+      const file = await caller.get(`/dams/${damId}/events.csv?${query}`).expect(200);
+      const rows = file.text.trimEnd().split('\r\n').slice(1);
+      expect(rows.map((row) => row.match(/\bnote\.\w+/)?.[0])).toEqual(kinds);
+    }
+    await caller.get(`/dams/${damId}/events?about=weather`).expect(400);
+    await caller.get(`/dams/${damId}/events.csv?from=yesterday`).expect(400);
+  });
+
+  it('of the activity of many years are made in pages, each event once', async () => {
+    const { caller, damId, engineer } = await addNet(app);
+    await app.db.query(
+      `INSERT INTO event (id, dam_id, person_id, type, text, at)
+        SELECT gen_random_uuid(), $1, $2, 'dam.changed', 'change ' || n, timestamptz '2001-01-01' + (n / 7) * interval '1 minute'
+        FROM generate_series(1, 2345) n`,
+      [damId, engineer.id],
+    );
+    const { text } = await caller
+      .get(`/dams/${damId}/events.csv?about=dam&until=2002-01-01T00:00:00Z`)
+      .expect(200);
+    const changes = text
+      .trimEnd()
+      .split('\r\n')
+      .slice(1)
+      .map((row) => row.split(',')[2]);
+    expect(new Set(changes).size).toBe(2345);
+    expect(changes).toHaveLength(2345);
   });
 });

@@ -2,6 +2,7 @@ import { infiniteQueryOptions } from '@tanstack/react-query';
 import { getJson } from '#client/lib/http.ts';
 import { pageOf } from '#shared/contract/common.ts';
 import { eventDto } from '#shared/contract/dams.ts';
+import type { EventFilter } from '#shared/contract/events.ts';
 
 const eventPage = pageOf(eventDto);
 
@@ -13,18 +14,19 @@ export const activityKeys = {
 };
 
 /** What happened, newest first, page by page. */
-const eventsQuery = (path: string, queryKey: readonly string[]) =>
+const eventsQuery = (path: string, queryKey: readonly unknown[], filter: EventFilter = {}) =>
   infiniteQueryOptions({
-    queryKey,
-    queryFn: ({ pageParam, signal }) => getJson(path, eventPage, { query: { cursor: pageParam }, signal }),
+    queryKey: [...queryKey, filter],
+    queryFn: ({ pageParam, signal }) =>
+      getJson(path, eventPage, { query: { ...filter, cursor: pageParam }, signal }),
     initialPageParam: undefined as string | undefined,
     getNextPageParam: (page) => page.nextCursor ?? undefined,
   });
 
 export type ActivityQuery = ReturnType<typeof eventsQuery>;
 
-export const damActivityQuery = (damId: string) =>
-  eventsQuery(`/dams/${damId}/events`, activityKeys.dam(damId));
+export const damActivityQuery = (damId: string, filter: EventFilter = {}) =>
+  eventsQuery(`/dams/${damId}/events`, activityKeys.dam(damId), filter);
 
 /** What belongs to no dam: accounts, invitations, passwords. For who manages people. */
 export const peopleActivityQuery = () => eventsQuery('/events', activityKeys.people);

@@ -45,11 +45,17 @@ export function RecentActivity({ damId }: { damId: string }) {
   );
 }
 
+interface ActivityTableProps {
+  of: ActivityQuery;
+  /** Said when there is nothing. */
+  none?: string;
+}
+
 /** All of it as a table, a page at a time. */
-export function ActivityTable({ of }: { of: ActivityQuery }) {
+export function ActivityTable({ of, none = text.none }: ActivityTableProps) {
   const query = useSuspenseInfiniteQuery(of);
   const events = query.data.pages.flatMap((page) => page.items);
-  if (events.length === 0) return <Empty>{text.none}</Empty>;
+  if (events.length === 0) return <Empty>{none}</Empty>;
   return (
     <>
       <Table caption={text.caption}>
