@@ -46,6 +46,7 @@ function contentOfNet(): SheetContent {
       stayedOpen: [],
       decision: null,
       records: [],
+      review: { openings: [], blindReadings: [], checks: [] },
     },
     jobNumber: '1',
     dam: { name: 'Bench' },

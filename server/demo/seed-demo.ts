@@ -68,6 +68,7 @@ async function sendApron(deps: AppDeps): Promise<void> {
       reviewerIds: [reviewer.id],
       dueOn: null,
       message,
+      blindFirst: false,
       reasons: await demoReasons(tx),
       changeNumber: Number(changeNumber),
     };

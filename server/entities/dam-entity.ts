@@ -1,5 +1,6 @@
 import { Check, Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import type { DamRole } from '#shared/contract/actions.ts';
+import type { CheckListItem } from '#shared/contract/check-list.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
 import { PersonEntity } from './person-entity.ts';
 
@@ -13,6 +14,8 @@ export class DamEntity {
   @Column('text') datum!: string;
   @Column('double precision', { nullable: true }) fullSupplyLevel!: number | null;
   @Column('double precision') gammaW!: number;
+  /** What reviewers of the dam answer; null = the usual list. */
+  @Column('jsonb', { nullable: true }) checkList!: CheckListItem[] | null;
   @ForeignKey(() => PersonEntity) @Column('uuid') createdBy!: string;
   @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
   @Column('timestamptz', { nullable: true }) archivedAt!: Date | null;

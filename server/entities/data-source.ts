@@ -5,7 +5,7 @@ import { CalculationSheetEntity } from './calculation-sheet-entity.ts';
 import { DamEntity, EventEntity, MembershipEntity } from './dam-entity.ts';
 import { DrawingEntity, RenderJobEntity, SheetEntity } from './drawing-entity.ts';
 import { ArtifactEntity, DecisionEntity, ReviewReminderEntity, RevisionEntity } from './ledger-entity.ts';
-import { OutboxMailEntity } from './mail-entity.ts';
+import { MailDigestEntity, OutboxMailEntity } from './mail-entity.ts';
 import { SnakeNamingStrategy } from './naming-strategy.ts';
 import { CommandBatchEntity, DocumentEntityRow, NetEntity, SectionEntity } from './net-entity.ts';
 import {
@@ -18,6 +18,7 @@ import {
 import { PersonEntity, PersonTokenEntity, SessionEntity, SignInFailureEntity } from './person-entity.ts';
 import { NetPresenceEntity } from './presence-entity.ts';
 import { RenditionEntity } from './rendition-entity.ts';
+import { CheckDraftEntity, ReviewRecordEntity } from './review-entity.ts';
 
 export const entities = [
   PersonEntity,
@@ -43,8 +44,11 @@ export const entities = [
   RevisionEntity,
   DecisionEntity,
   ReviewReminderEntity,
+  ReviewRecordEntity,
+  CheckDraftEntity,
   ArtifactEntity,
   CalculationSheetEntity,
+  MailDigestEntity,
   OutboxMailEntity,
   NetPresenceEntity,
 ];

@@ -27,6 +27,8 @@ export class RevisionEntity {
   /** The day by which the check is wanted. */
   @Column('date', { nullable: true }) dueOn!: string | null;
   @Column('text', { default: '' }) message!: string;
+  /** Whether a blind reading was asked for; null for what was sent before there was one. */
+  @Column('boolean', { nullable: true }) blindFirst!: boolean | null;
   @Column('timestamptz') sentAt!: Date;
 }
 

@@ -4,6 +4,7 @@ import type { AppDeps } from '#server/app-deps.ts';
 import { AppError } from '#server/errors/app-error.ts';
 import { authorise } from './authorise.ts';
 import { isCsrfTokenValid } from './csrf.ts';
+import { refuseKeptBack } from './kept-back.ts';
 import type { RouteRecord } from './route-record.ts';
 import { parseInput } from './validate.ts';
 
@@ -16,7 +17,8 @@ const parseJson = (req: Request, res: Response) =>
   });
 
 function requireCsrfToken(record: RouteRecord, req: Request): void {
-  if (record.method === 'get' || isCsrfTokenValid(req)) return;
+  // What a signed link does is decided by its signature alone, whatever session the request may carry.
+  if (record.method === 'get' || record.access.who === 'signedLink' || isCsrfTokenValid(req)) return;
   throw new AppError(
     'csrf',
     403,
@@ -30,6 +32,7 @@ function handlerOf(record: RouteRecord, deps: AppDeps): RequestHandler {
   return async (req, res) => {
     const { actor, scope } = await authorise(record.access, req, deps);
     requireCsrfToken(record, req);
+    await refuseKeptBack(deps.db.manager, record, req, { actor, scope });
     if (record.body) await parseJson(req, res);
     const input = parseInput(record, { params: req.params, query: req.query, body: req.body });
     const result = await record.handle({ ...input, actor, scope, deps, req, res });

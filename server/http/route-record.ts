@@ -12,6 +12,8 @@ export type TargetKind = 'dam' | 'drawing' | 'sheet' | 'section' | 'net' | 'note
  */
 export type AccessRule =
   | { who: 'public' }
+  /** Whoever holds a link that the handler verifies: a mail program, which has neither a session nor its token. */
+  | { who: 'signedLink' }
   | { who: 'signedIn' }
   | { who: 'global'; action: GlobalAction }
   | { who: 'dam'; action: DamAction; target: TargetKind };
@@ -47,6 +49,8 @@ export interface RouteRecord {
   /** Path below /api/v1, kebab-case plurals: `/dams/:damId/drawings`. */
   path: string;
   access: AccessRule;
+  /** That a route about a net or a revision tells none of its figures, so that it is answered to who may read blind. */
+  figures: 'none' | undefined;
   params: Schema | undefined;
   query: Schema | undefined;
   body: Schema | undefined;
@@ -65,6 +69,7 @@ interface RouteDefinition<
   method: RouteRecord['method'];
   path: string;
   access: A;
+  figures?: 'none';
   params?: P;
   query?: Q;
   /** Schema of a JSON body. A route without one that takes bytes reads `req` itself, after policy and CSRF. */
@@ -75,7 +80,7 @@ interface RouteDefinition<
   status?: number;
   handle: (
     context: RouteContext<Out<P>, Out<Q>, Out<B>> & {
-      actor: A extends { who: 'public' } ? Actor | null : Actor;
+      actor: A extends { who: 'public' | 'signedLink' } ? Actor | null : Actor;
       scope: A extends { who: 'dam' } ? DamScope : null;
     },
   ) => Promise<R extends Schema ? z.input<R> : void>;
@@ -89,11 +94,12 @@ export function defineRoute<
   B extends Schema | undefined = undefined,
   R extends Schema | undefined = undefined,
 >(definition: RouteDefinition<A, P, Q, B, R>): RouteRecord {
-  const { method, path, access, params, query, body, reply, status, handle } = definition;
+  const { method, path, access, figures, params, query, body, reply, status, handle } = definition;
   return {
     method,
     path,
     access,
+    figures,
     params,
     query,
     body,

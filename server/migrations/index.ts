@@ -17,6 +17,8 @@ import { DocumentVersion31796126400111 } from './1796126400111-document-version-
 import { NetPresence1796126400120 } from './1796126400120-net-presence.ts';
 import { NoteThreads1796126400130 } from './1796126400130-note-threads.ts';
 import { SignedDecisions1796126400140 } from './1796126400140-signed-decisions.ts';
+import { ReviewersRecords1796126400141 } from './1796126400141-reviewers-records.ts';
+import { MailDigests1796126400154 } from './1796126400154-mail-digests.ts';
 import { Register1796126400157 } from './1796126400157-register.ts';
 
 /** In the order they run. */
@@ -40,5 +42,7 @@ export const migrations = [
   NetPresence1796126400120,
   NoteThreads1796126400130,
   SignedDecisions1796126400140,
+  ReviewersRecords1796126400141,
+  MailDigests1796126400154,
   Register1796126400157,
 ];

@@ -1,6 +1,7 @@
 import type { RouteRecord } from '#server/http/route-record.ts';
 import { archiveRoutes } from './archive-routes.ts';
 import { calculationSheetRoutes } from './calculation-sheet-routes.ts';
+import { checkListRoutes } from './check-list-routes.ts';
 import { commandRoutes } from './command-routes.ts';
 import { damRoutes } from './dam-routes.ts';
 import { damSeepageRoutes } from './dam-seepage-routes.ts';
@@ -15,6 +16,7 @@ import { peopleRoutes } from './people-routes.ts';
 import { presenceRoutes } from './presence-routes.ts';
 import { registerRoutes } from './register-routes.ts';
 import { renditionRoutes } from './rendition-routes.ts';
+import { reviewRoutes } from './review-routes.ts';
 import { revisionRoutes } from './revision-routes.ts';
 import { scheduleRoutes } from './schedule-routes.ts';
 import { sectionRoutes } from './section-routes.ts';
@@ -26,6 +28,7 @@ export const routes: readonly RouteRecord[] = [
   ...sessionRoutes,
   ...peopleRoutes,
   ...damRoutes,
+  ...checkListRoutes,
   ...damSeepageRoutes,
   ...archiveRoutes,
   ...registerRoutes,
@@ -43,5 +46,6 @@ export const routes: readonly RouteRecord[] = [
   ...downloadRoutes,
   ...noteRoutes,
   ...revisionRoutes,
+  ...reviewRoutes,
   ...calculationSheetRoutes,
 ];

@@ -34,6 +34,7 @@ export const revisionRoutes: RouteRecord[] = [
     method: 'get',
     path: '/nets/:netId/revisions',
     access: { who: 'dam', action: 'dam.read', target: 'net' },
+    figures: 'none',
     params: netParams,
     reply: revisionListDto,
     handle: async ({ deps, params }) => ({ items: await revisionsOfNet(deps.db.manager, params.netId) }),

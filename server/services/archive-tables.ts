@@ -55,6 +55,9 @@ export const ARCHIVED_TABLES: readonly ArchivedTable[] = [
   { name: 'revision', where: IN_NETS, order: 'net_id, number', isLedger: true },
   { name: 'decision', where: IN_REVISIONS, order: 'decided_at, id', isLedger: true },
   { name: 'review_reminder', where: IN_REVISIONS, order: 'id' },
+  // The chain of each revision from its first record on.
+  { name: 'review_record', where: IN_REVISIONS, order: 'revision_id, number', isLedger: true },
+  { name: 'check_draft', where: IN_REVISIONS, order: 'revision_id, person_id' },
   { name: 'artifact', where: IN_REVISIONS, order: 'id', isLedger: true, fileOf: stored },
   { name: 'calculation_sheet', where: IN_NETS, order: 'id', fileOf: stored },
   { name: 'event', where: 'dam_id = $1', order: 'at, id' },
@@ -67,6 +70,7 @@ export const LEFT_OUT: Record<string, string> = {
   session: 'sign-ins end with the installation',
   sign_in_failure: 'counts of wrong passwords end with the installation',
   outbox_mail: 'a mail is sent once, by the installation that wrote it',
+  mail_digest: 'how an installation mails its people is its own',
   net_presence: 'who has a net open now',
   register_entry: 'worked out of the other tables as their rows are entered',
   register_stale: 'drawings of which a transaction has still to bring the register up to date',

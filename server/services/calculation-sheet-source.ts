@@ -8,6 +8,7 @@ import { readDocument } from './net-document.ts';
 import { drawersOfNet } from './net-drawers.ts';
 import { placeOfNet } from './net-place.ts';
 import { notesOfNet } from './note-queries.ts';
+import { reviewOf } from './review-queries.ts';
 import { openRevision, revisionSummaryOf } from './revision-queries.ts';
 import { readingOf } from './schedule-queries.ts';
 
@@ -38,11 +39,12 @@ async function revisionMaterial(
 ): Promise<SheetMaterial> {
   const { row, payload } = await openRevision(manager, revisionId);
   const summary = await revisionSummaryOf(manager, revisionId);
+  const review = await reviewOf(manager, row);
   const notes = await notesOfNet(manager, row.netId);
   return {
     sheet: await manager.findOneByOrFail(SheetEntity, { id: payload.sheet.id }),
     madeAt: new Date(summary.decision?.decidedAt ?? payload.sentAt),
-    source: revisionSource({ payload, hash: row.payloadHash, summary, notes, jobNumber }),
+    source: revisionSource({ payload, hash: row.payloadHash, summary, review, notes, jobNumber }),
   };
 }
 

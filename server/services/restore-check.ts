@@ -1,11 +1,13 @@
 import type { DataSource } from 'typeorm';
 import * as z from 'zod/mini';
 import type { RevisionEntity } from '#server/entities/ledger-entity.ts';
+import type { ReviewRecordEntity } from '#server/entities/review-entity.ts';
 import { type ArchivedPerson, archivedPerson } from '#shared/contract/archives.ts';
 import { FLOW_NET_VERSION } from '#shared/contract/document.ts';
 import { type ArchiveFile, refusedArchive, verifyEntries } from './archive-file.ts';
 import { fileEntry, PEOPLE_ENTRY, tableEntry } from './archive-service.ts';
 import { ARCHIVED_TABLES, type ArchivedRow, type ArchivedTable } from './archive-tables.ts';
+import { openReviewRecords } from './review-records.ts';
 import { openPayload } from './revision-payload.ts';
 
 /**
@@ -66,6 +68,7 @@ async function checkTable(archive: ArchiveFile, table: ArchivedTable, columns: S
 /** Every revision against its hash, its row and the revision before it in the same net. */
 async function checkLedger(archive: ArchiveFile): Promise<void> {
   const newest = new Map<string, string>();
+  const revisions = new Map<string, RevisionEntity>();
   for await (const json of rowsOf(archive, 'revision')) {
     const row = asEntity(json) as unknown as RevisionEntity;
     try {
@@ -77,6 +80,32 @@ async function checkLedger(archive: ArchiveFile): Promise<void> {
       );
     }
     newest.set(row.netId, row.payloadHash);
+    revisions.set(row.id, row);
+  }
+  await checkReviewRecords(archive, revisions);
+}
+
+/** The records of every revision against their hashes and the ones before them. */
+async function checkReviewRecords(
+  archive: ArchiveFile,
+  revisions: ReadonlyMap<string, RevisionEntity>,
+): Promise<void> {
+  const chains = new Map<string, ReviewRecordEntity[]>();
+  for await (const json of rowsOf(archive, 'review_record')) {
+    const row = asEntity(json) as unknown as ReviewRecordEntity;
+    chains.set(row.revisionId, [...(chains.get(row.revisionId) ?? []), row]);
+  }
+  for (const [revisionId, rows] of chains) {
+    const revision = revisions.get(revisionId);
+    try {
+      if (revision === undefined) throw new Error('its revision is missing');
+      openReviewRecords(rows, revision);
+    } catch {
+      throw refusedArchive(
+        tableEntry('review_record'),
+        `A record of revision ${revision?.label ?? revisionId} is not as it was made, or does not follow the one before it.`,
+      );
+    }
   }
 }
 
@@ -85,7 +114,10 @@ function asEntity(row: ArchivedRow): Record<string, unknown> {
   return Object.fromEntries(
     Object.entries(row).map(([column, value]) => {
       const member = column.replaceAll(/_([a-z])/g, (_, letter: string) => letter.toUpperCase());
-      return [member, column.endsWith('_at') && typeof value === 'string' ? new Date(value) : value];
+      return [
+        member,
+        (column === 'at' || column.endsWith('_at')) && typeof value === 'string' ? new Date(value) : value,
+      ];
     }),
   );
 }

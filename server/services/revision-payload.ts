@@ -7,7 +7,7 @@ import { upgradeDocument } from '#shared/contract/document-versions.ts';
 import { completeReading } from '#shared/contract/reading-versions.ts';
 import { type RevisionPayload, revisionPayload } from '#shared/contract/revisions.ts';
 
-const sha256 = (text: string) => createHash('sha256').update(text, 'utf8').digest('hex');
+export const sha256 = (text: string) => createHash('sha256').update(text, 'utf8').digest('hex');
 
 /** The payload as canonical JSON (RFC 8785) and the SHA-256 of it, which is the revision's hash on every page. */
 export function freezePayload(payload: RevisionPayload): { text: string; hash: string } {
@@ -44,7 +44,7 @@ function completedPayload(json: unknown): unknown {
 }
 
 /** What payloads of earlier versions do not hold: it was not asked for then. */
-const ADDED = { stayedOpen: null, dueOn: null } satisfies Partial<RevisionPayload>;
+const ADDED = { stayedOpen: null, dueOn: null, blindFirst: null } satisfies Partial<RevisionPayload>;
 
 function faultOfRow(
   row: RevisionEntity,
@@ -62,6 +62,7 @@ function faultOfRow(
     ['time of sending', row.sentAt.toISOString(), payload.sentAt],
     ['engine version', row.engineVersion, payload.engineVersion],
     ['drawers', row.drawnBy.join(), payload.drawnBy.map((person) => person.id).join()],
+    ['blind reading', row.blindFirst ?? null, payload.blindFirst],
     ['previous hash', row.previousHash, payload.previousHash],
     ['hash of the revision before', previousHash, payload.previousHash],
   ];
@@ -69,7 +70,7 @@ function faultOfRow(
   return differing ? `the ${differing[0]} differs from the frozen one` : null;
 }
 
-function damaged(row: RevisionEntity, fault: string): AppError {
+export function damaged(row: Pick<RevisionEntity, 'id' | 'label' | 'netId'>, fault: string): AppError {
   return new AppError(
     'internal',
     500,

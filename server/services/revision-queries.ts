@@ -14,6 +14,7 @@ import type { DecisionDto, RevisionDto, RevisionState, RevisionSummary } from '#
 import { netActionsFor } from './net-actions.ts';
 import { placeOfNet, putAwayRefusal } from './net-place.ts';
 import { notesOfNet } from './note-queries.ts';
+import { checkDraftOf, checkListOfDam, reviewOf } from './review-queries.ts';
 import { openPayload } from './revision-payload.ts';
 import { presentSheet } from './sheet-presenter.ts';
 
@@ -37,7 +38,7 @@ const SUMMARIES = `
   SELECT r.id, r.label, r.sent_at, r.payload_hash, r.sent_by, s.name AS sender, r.due_on::text, t.state,
     (SELECT json_agg(json_build_object('id', v.id, 'name', v.name) ORDER BY array_position(r.reviewer_ids, v.id))
       FROM person v WHERE v.id = ANY (r.reviewer_ids)) AS reviewers,
-    (SELECT coalesce(json_agg(json_build_object('decision', d.decision,
+    (SELECT coalesce(json_agg(json_build_object('id', d.id, 'decision', d.decision,
         'decidedBy', json_build_object('id', p.id, 'name', p.name), 'signedName', d.signed_name,
         'capacity', d.capacity, 'note', d.note, 'decidedAt', d.decided_at) ORDER BY d.decided_at, d.id), '[]')
       FROM decision d JOIN person p ON p.id = d.decided_by WHERE d.revision_id = r.id) AS decisions,
@@ -118,18 +119,27 @@ export async function revisionDetail(
   const facts = await decisionFacts(manager, row, actor.id);
   const inUse = putAwayRefusal(place);
   const isReviewer = allowsOnDam('revision.decide', scope);
+  const decideRefusal = isReviewer
+    ? (decisionRefusal(facts)?.text ?? inUse?.detail ?? null)
+    : 'Only a reviewer of this dam decides on a revision.';
   return {
     summary: await revisionSummaryOf(manager, revisionId),
     payload,
     sheet: presentSheet(place.sheet),
     notes: await notesOfNet(manager, row.netId, actor.id),
     can: netActionsFor(place, scope),
-    decideRefusal: isReviewer
-      ? (decisionRefusal(facts)?.text ?? inUse?.detail ?? null)
-      : 'Only a reviewer of this dam decides on a revision.',
+    decideRefusal,
     canWithdrawAcceptance: isReviewer && acceptanceWithdrawalRefusal(facts) === null,
     canWithdrawSending:
       allowsOnDam('net.send', scope) && inUse === null && sendingWithdrawalRefusal(facts.state) === null,
+    review: await reviewOf(manager, row),
+    checking:
+      decideRefusal === null
+        ? {
+            checkList: [...(await checkListOfDam(manager, payload.dam.id))],
+            draft: await checkDraftOf(manager, revisionId, actor.id),
+          }
+        : null,
   };
 }
 

@@ -9,18 +9,22 @@ import {
   decisionRefusal,
   sendingWithdrawalRefusal,
 } from '#server/policies/revision-policy.ts';
+import type { FrozenCheck } from '#shared/contract/review.ts';
 import type {
   acceptanceWithdrawalInput,
   DecisionKind,
   decisionInput,
   sendingWithdrawalInput,
 } from '#shared/contract/revisions.ts';
+import { createCheckDraftService } from './check-draft-service.ts';
 import { refuseUnanswered } from './must-answer.ts';
 import { lockNet } from './net-locks.ts';
 import { placeOfNet, refusePutAway } from './net-place.ts';
+import { appendReviewRecord } from './review-records.ts';
 import { announceDecision, mailDecision, mailSendingWithdrawn } from './revision-announcements.ts';
 import { decisionFacts, openRevision } from './revision-queries.ts';
 import type { ServiceDeps } from './service-deps.ts';
+import { wellFormed } from './well-formed.ts';
 
 type DecisionInput = z.output<typeof decisionInput>;
 type AcceptanceWithdrawal = z.output<typeof acceptanceWithdrawalInput>;
@@ -42,7 +46,8 @@ export function createRevisionService(deps: RevisionServiceDeps) {
     const { decision, note, capacity } = input;
     if (decision !== 'accepted' && note === '') throw noteNeeded(decision);
     if (decision !== 'returned') await refuseUnanswered(manager, row.netId);
-    await insertRecord(row, actor, { decision, note, signedName: actor.name, capacity });
+    const check = await createCheckDraftService(deps).freeze(payload, decision, actor);
+    await insertRecord(row, actor, { decision, note, signedName: actor.name, capacity }, check);
     const told = { decision, note, capacity };
     await mailDecision(deps, payload, told, actor);
     await announceDecision(deps, payload, decision, actor);
@@ -90,17 +95,21 @@ export function createRevisionService(deps: RevisionServiceDeps) {
   }
 
   async function insertRecord(
-    { id: revisionId }: RevisionEntity,
+    row: RevisionEntity,
     actor: Actor,
-    record: Pick<DecisionEntity, 'decision' | 'note' | 'signedName' | 'capacity'>,
+    said: Pick<DecisionEntity, 'decision' | 'note' | 'signedName' | 'capacity'>,
+    check: FrozenCheck | null = null,
   ): Promise<void> {
+    const [decisionId, at] = [uuidv7(), clock.now()];
+    const record = { ...said, note: wellFormed(said.note), capacity: wellFormed(said.capacity) };
     await manager.insert(DecisionEntity, {
-      id: uuidv7(),
-      revisionId,
+      id: decisionId,
+      revisionId: row.id,
       decidedBy: actor.id,
-      decidedAt: clock.now(),
+      decidedAt: at,
       ...record,
     });
+    await appendReviewRecord(manager, row, actor, at, { kind: 'decision', decisionId, ...record, check });
   }
 
   return { decide, withdrawAcceptance, withdrawSending };

@@ -31,6 +31,7 @@ import {
   sendingRefusal,
 } from './sending-queries.ts';
 import type { ServiceDeps } from './service-deps.ts';
+import { wellFormed } from './well-formed.ts';
 
 type SendInput = z.output<typeof sendInput>;
 export type SendingDeps = Pick<ServiceDeps, 'manager' | 'clock' | 'live' | 'jobs' | 'config'>;
@@ -84,6 +85,7 @@ export function createSendingService(deps: SendingDeps) {
       dueOn: input.dueOn,
       sentAt: clock.now().toISOString(),
       message: wellFormed(input.message),
+      blindFirst: input.blindFirst,
       stayedOpen: withReasons(await openItemsOf(manager, place.net.id, document, reading), input.reasons),
       previousHash: previous?.payloadHash ?? null,
     };
@@ -108,6 +110,7 @@ export function createSendingService(deps: SendingDeps) {
       reviewerIds: payload.reviewers.map((person) => person.id),
       dueOn: payload.dueOn,
       message: payload.message,
+      blindFirst: payload.blindFirst,
       sentAt: new Date(payload.sentAt),
     });
     return hash;
@@ -125,13 +128,17 @@ export function createSendingService(deps: SendingDeps) {
       sentBy: actor.name,
       message,
       dueOn: payload.dueOn,
-      changes: previous && (await changesSinceRevision(manager, previous.id, payload)),
-      figures: scheduleFigures(payload),
+      // Who is to read the net alone must not find the figures in the mail.
+      changes: payload.blindFirst
+        ? null
+        : previous && (await changesSinceRevision(manager, previous.id, payload)),
+      figures: payload.blindFirst ? null : scheduleFigures(payload),
       hash,
       url: `${config.publicUrl}/revisions/${revisionId}`,
     });
-    for (const { id, email } of reviewers) await queueMail(deps, { ...letter, personId: id, to: email });
     const damId = place.dam.id;
+    for (const { id, email } of reviewers)
+      await queueMail(deps, { ...letter, personId: id, to: email, damId, revisionId });
     await writeEvent(manager, {
       damId,
       drawingId: place.drawing.id,
@@ -211,6 +218,3 @@ const changedMeanwhile = (changeNumber: number) =>
     'Somebody changed the net after you last saw it, so it was not sent. Look at the change and send it again.',
     { changeNumber },
   );
-
-/** Halves of a pair of characters, which canonical JSON cannot hold, become the sign for an unreadable one. */
-const wellFormed = (text: string) => text.replaceAll(/\p{Cs}/gu, '\ufffd');

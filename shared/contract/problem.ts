@@ -19,6 +19,7 @@ export const problemCode = z.enum([
   'net-unfinished',
   'own-work',
   'already-decided',
+  'figures-kept-back',
   'disk-full',
   'unavailable',
   'internal',

@@ -1,12 +1,15 @@
 import * as z from 'zod/mini';
 import { damAction } from './actions.ts';
 import { openItem, openReason, stayedOpen } from './before-sending.ts';
+import { checkListItem } from './check-list.ts';
 import { id, personRef, timestamp } from './common.ts';
+import { decisionKind } from './decision-kind.ts';
 import { flowNetDocument } from './document.ts';
 import { sheetDto } from './drawings.ts';
 import { MAX_NOTE_LENGTH, MAX_OPEN_REASONS, MAX_PASSWORD_LENGTH } from './limits.ts';
 import { noteDto } from './notes.ts';
 import { finding, netReading } from './reading.ts';
+import { checkDraftDto, reviewDto } from './review.ts';
 
 /** `GET /nets/:netId/sending`: what to know before sending for checking. */
 export const sendingDto = z.object({
@@ -21,6 +24,8 @@ export const sendingDto = z.object({
 });
 export type SendingDto = z.infer<typeof sendingDto>;
 
+export { type DecisionKind, decisionKind } from './decision-kind.ts';
+
 export const MAX_REVIEWERS = 10;
 
 export const sendInput = z.object({
@@ -32,6 +37,8 @@ export const sendInput = z.object({
   message: z.string().check(z.trim(), z.maxLength(MAX_NOTE_LENGTH)),
   /** A reason for each item that is still open; one that is open without a reason is asked for. */
   reasons: z._default(z.array(openReason).check(z.maxLength(MAX_OPEN_REASONS)), []),
+  /** Asks the reviewers to read points on the net alone first: the mail then tells no figures. */
+  blindFirst: z._default(z.boolean(), false),
   /** Newest change the sender saw; a later one by someone else is a conflict and nothing is sent. */
   changeNumber: z.number(),
 });
@@ -59,22 +66,14 @@ export const revisionPayload = z.object({
   dueOn: z.nullable(z.string()),
   sentAt: timestamp,
   message: z.string(),
+  /** Whether a blind reading was asked for; null where there was none yet, and the figures were never kept back. */
+  blindFirst: z.nullable(z.boolean()),
   /** What was open when it was sent, with the engineer's reasons; null where nobody was asked, before that was kept. */
   stayedOpen: z.nullable(z.array(stayedOpen)),
   /** Hash of the revision before it in the same net; null for the first. */
   previousHash: z.nullable(z.string()),
 });
 export type RevisionPayload = z.infer<typeof revisionPayload>;
-
-/** A reviewer's decision, or that an acceptance or the sending itself was withdrawn. */
-export const decisionKind = z.enum([
-  'accepted',
-  'acceptedWithNotes',
-  'returned',
-  'acceptanceWithdrawn',
-  'sendingWithdrawn',
-]);
-export type DecisionKind = z.infer<typeof decisionKind>;
 
 /** What the records of a revision come to. */
 export const revisionState = z.enum([
@@ -88,6 +87,7 @@ export const revisionState = z.enum([
 export type RevisionState = z.infer<typeof revisionState>;
 
 export const decisionDto = z.object({
+  id,
   decision: decisionKind,
   decidedBy: personRef,
   /** As signed; empty where it was not signed. */
@@ -129,6 +129,10 @@ export const revisionDto = z.object({
   /** Whether the reader may withdraw the acceptance, or the sending. */
   canWithdrawAcceptance: z.boolean(),
   canWithdrawSending: z.boolean(),
+  /** Who opened the figures when, blind readings, and what the decisions froze of the check. */
+  review: reviewDto,
+  /** The check list and the reader's own ticks and answers; null for who may not decide. */
+  checking: z.nullable(z.object({ checkList: z.array(checkListItem), draft: checkDraftDto })),
 });
 export type RevisionDto = z.infer<typeof revisionDto>;
 

@@ -4,18 +4,22 @@ import os from 'node:os';
 import path from 'node:path';
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { RevisionEntity } from '#server/entities/ledger-entity.ts';
 import { ARCHIVED_TABLES, LEFT_OUT } from '#server/services/archive-tables.ts';
 import { readDocument } from '#server/services/net-document.ts';
 import { placeOfNet } from '#server/services/net-place.ts';
+import { appendReviewRecord } from '#server/services/review-records.ts';
 import { freezePayload } from '#server/services/revision-payload.ts';
 import { artifactKey, originalKey } from '#server/storage/storage-keys.ts';
 import { ENGINE_VERSION } from '#shared/compute/engine-version.ts';
 import { readNet } from '#shared/compute/read-net.ts';
 import type { ArchiveManifest } from '#shared/contract/archives.ts';
 import type { RevisionPayload } from '#shared/contract/revisions.ts';
+import { downloadArchive, expectSameRows } from '#tests/support/archived-rows.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { type ReadyNet, readyToSend } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
+import type { TestPerson } from '#tests/support/test-people.ts';
 import { readZip, writeZip } from '#tests/support/zip-files.ts';
 
 const folder = mkdtempSync(path.join(os.tmpdir(), 'tracehead-archive-'));
@@ -30,7 +34,8 @@ beforeAll(async () => {
   app = await createTestApp();
   damId = await addDamWithRecords();
   admin = (await app.signIn('Archivist', { admin: true })).caller;
-  archiveFile = await download(app, admin, 'dam.zip');
+  archiveFile = path.join(folder, 'dam.zip');
+  await downloadArchive(app, admin, damId, archiveFile);
 }, 120_000);
 afterAll(async () => {
   await app.close();
@@ -46,7 +51,7 @@ async function addDamWithRecords(): Promise<string> {
   const revisionId = await freeze(place);
   const note = { id: uuidv7(), anchor: { on: 'place', at: [1, 1] }, text: 'Why so steep?' };
   await reviewer.caller.post(`/nets/${netId}/notes`, note).expect(201);
-  await addLedger(revisionId, reviewer.person.id);
+  await addLedger(revisionId, reviewer.person);
   await addToNote(netId, note.id, reviewer.person.id);
   return place.damId;
 }
@@ -76,6 +81,7 @@ async function freeze({ netId, engineer, reviewer }: ReadyNet): Promise<string> 
     dueOn: null,
     sentAt: new Date().toISOString(),
     message: 'Please look at line 3.',
+    blindFirst: null,
     stayedOpen: [],
     previousHash: null,
   };
@@ -95,10 +101,18 @@ async function freeze({ netId, engineer, reviewer }: ReadyNet): Promise<string> 
 const documentOf = async (of: TestApp, netId: string) =>
   readDocument(of.db.manager, await placeOfNet(of.db.manager, netId));
 
-async function addLedger(revisionId: string, reviewerId: string): Promise<void> {
+async function addLedger(revisionId: string, reviewer: TestPerson): Promise<void> {
+  const row = await app.db.getRepository(RevisionEntity).findOneByOrFail({ id: revisionId });
+  const at = new Date();
+  await appendReviewRecord(app.db.manager, row, reviewer, at, { kind: 'placesShown' });
+  await appendReviewRecord(app.db.manager, row, reviewer, at, { kind: 'figuresOpened' });
+  await app.db.query(
+    `INSERT INTO check_draft VALUES ($1, $2, '{title block drops}', '[{"itemId": "datum", "answer": "yes", "remark": "γ"}]', now())`,
+    [revisionId, reviewer.id],
+  );
   await app.db.query(
     `INSERT INTO decision (id, revision_id, decision, decided_by, note, decided_at) VALUES ($1, $2, 'accepted', $3, 'Good.', now())`,
-    [uuidv7(), revisionId, reviewerId],
+    [uuidv7(), revisionId, reviewer.id],
   );
   const pdf = await keep(Buffer.from('%PDF-1.7 sheet'), artifactKey);
   await app.db.query(
@@ -130,15 +144,6 @@ async function keep(content: Buffer, keyOf: (hash: string) => string): Promise<s
   return hash;
 }
 
-async function download(from: TestApp, caller: Caller, name: string): Promise<string> {
-  const headers = { cookie: caller.cookieHeader() };
-  const answer = await fetch(`${from.address}/api/v1/dams/${damId}/archive.zip`, { headers });
-  expect(answer.status).toBe(200);
-  const file = path.join(folder, name);
-  writeFileSync(file, Buffer.from(await answer.arrayBuffer()));
-  return file;
-}
-
 const upload = (caller: Caller, file: string) =>
   caller.post('/archives').set('Content-Type', 'application/zip').send(readFileSync(file));
 
@@ -163,21 +168,6 @@ async function changedArchive(
   const file = path.join(folder, `${randomUUID()}.zip`);
   await writeZip(file, entries);
   return file;
-}
-
-/** All rows of a dam's table as the database writes them, without what a restore does not keep. */
-async function rowsOf(
-  of: TestApp,
-  { name, where, order }: (typeof ARCHIVED_TABLES)[number],
-): Promise<unknown[]> {
-  const rows: Array<{ line: string }> = await of.db.query(
-    `SELECT row_to_json(t)::text AS line FROM ${name} t WHERE ${where} ORDER BY ${order}`,
-    [damId],
-  );
-  return rows
-    .map(({ line }) => line)
-    .filter((line) => name !== 'event' || !line.includes('"dam.restored"'))
-    .map((line) => (name === 'sheet' ? line.replace(/"ready_zoom":(0|null)/, '"ready_zoom":…') : line));
 }
 
 describe('an archive', () => {
@@ -278,6 +268,17 @@ describe('restoring into an empty installation', () => {
     await expectRefused(file, /^tables\/revision\.ndjson: Revision .+ not as it was frozen/);
   });
 
+  it('is refused when a record of a reviewer was changed or taken out', async () => {
+    const entry = 'tables/review_record.ndjson';
+    const lines = (content: Buffer) => content.toString().trimEnd().split('\n');
+    const renamed = (content: Buffer) => Buffer.from(content.toString().replaceAll('Remi Okafor', 'Another'));
+    const without = (content: Buffer) => Buffer.from(`${lines(content).slice(1).join('\n')}\n`);
+    for (const change of [renamed, without]) {
+      const file = await changedArchive(entry, change, { manifestToo: true });
+      await expectRefused(file, /^tables\/review_record\.ndjson: A record of revision A is not as it was/);
+    }
+  });
+
   it('is refused for an entry too many, one too few, and a format of another day', async () => {
     const whole = await readZip(archiveFile);
     const write = async (entries: Map<string, Buffer>) => {
@@ -296,10 +297,7 @@ describe('restoring into an empty installation', () => {
   it('brings back every row, file and figure; people come without a password', async () => {
     const { body } = await upload(caller, archiveFile).expect(201);
     expect(body).toMatchObject({ damId, name: expect.any(String) });
-    for (const table of ARCHIVED_TABLES) {
-      if (table.name === 'render_job') continue;
-      expect(await rowsOf(empty, table), table.name).toEqual(await rowsOf(app, table));
-    }
+    await expectSameRows(app, empty, damId);
     for (const { name } of manifestOf(await readZip(archiveFile)).entries)
       if (name.startsWith('files/')) {
         const file = readFileSync(path.join(empty.storageDir, name.slice('files/'.length)));

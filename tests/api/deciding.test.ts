@@ -4,6 +4,7 @@ import {
   addRolePerson,
   beginLine,
   mailsFor,
+  readyToDecide,
   SIGNATURE,
   sendInputFor,
   sentRevision,
@@ -64,6 +65,7 @@ describe('deciding', () => {
     const input = await sendInputFor(place, reviewer.person.id);
     const second = await caller.post(`/nets/${netId}/revisions`, input).expect(201);
     expect(second.body.label).toBe('B');
+    await readyToDecide(reviewer.caller, input.id);
     const first = await reviewer.caller.get(`/revisions/${revisionId}`).expect(200);
     const opened = await reviewer.caller.get(`/revisions/${input.id}`).expect(200);
     expect(opened.body.payload.previousHash).toBe(first.body.summary.hash);
@@ -228,6 +230,7 @@ it('an accepted revision supersedes the accepted one before it, and both stay re
   await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
   const before = (await place.caller.get(`/revisions/${place.revisionId}`).expect(200)).body;
   expect(before.summary.supersededBy).toBeNull();
+  await readyToDecide(place.reviewer.caller, input.id);
   await place.reviewer.caller.post(`/revisions/${input.id}/decision`, accept).expect(201);
   const after = (await place.caller.get(`/revisions/${place.revisionId}`).expect(200)).body;
   expect(after.summary).toMatchObject({ state: 'accepted', supersededBy: 'B' });

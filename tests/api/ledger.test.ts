@@ -4,7 +4,7 @@ import { pino } from 'pino';
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { addFinishedNet, batchesOf, lineOf, openNet, put, putSingle } from '#tests/support/net-fixture.ts';
-import { reasonsFor, SIGNATURE } from '#tests/support/revision-fixture.ts';
+import { readyToDecide, reasonsFor, SIGNATURE } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { withDataSource } from '#tests/support/test-database.ts';
 import { addMember } from '#tests/support/test-people.ts';
@@ -43,7 +43,9 @@ async function twoRevisions() {
   const first = await send();
   const unfinished = lineOf([[1, 1]], { finished: false });
   await place.caller.post(`/nets/${place.netId}/commands`, batchesOf()([put(unfinished)])).expect(200);
-  return { ...place, reviewer, checking, first, second: await send() };
+  const second = await send();
+  await readyToDecide(checking, second);
+  return { ...place, reviewer, checking, first, second };
 }
 
 const asOwner = (sql: string, parameters: unknown[]) =>

@@ -7,7 +7,7 @@ import { readNet } from '#shared/compute/read-net.ts';
 import { FLOW_NET_VERSION } from '#shared/contract/document.ts';
 import type { RevisionDto } from '#shared/contract/revisions.ts';
 import { firstDocument, firstReading } from '#tests/support/first-version/first-version.ts';
-import { beginLine, SIGNATURE, sendInputFor, sentRevision } from '#tests/support/revision-fixture.ts';
+import { beginLine, SIGNATURE, sendInputFor, sentUnopened } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { withDataSource } from '#tests/support/test-database.ts';
 
@@ -19,16 +19,16 @@ afterAll(() => app.close());
 
 /** A revision as the first version of the product froze it, with its hash. */
 async function olderRevision(change: (reading: Record<string, unknown>) => object = (reading) => reading) {
-  const place = await sentRevision(app);
+  const place = await sentUnopened(app);
   const { payload } = (
     await app.db.query('SELECT payload FROM revision WHERE id = $1', [place.revisionId])
   )[0];
   const older = { document: firstDocument(), reading: change(firstReading()), engineVersion: '1' };
-  const { stayedOpen: _notAskedThen, ...asThen } = JSON.parse(payload);
+  const { stayedOpen: _notAskedThen, blindFirst: _norThat, ...asThen } = JSON.parse(payload);
   const text = canonicalize({ ...asThen, ...older })!;
   const hash = createHash('sha256').update(text).digest('hex');
   await withDataSource(app.database.ownerUrl, (db) =>
-    db.query("UPDATE revision SET payload = $1, payload_hash = $2, engine_version = '1' WHERE id = $3", [
+    db.query("UPDATE revision SET payload = $1, payload_hash = $2, engine_version = '1', blind_first = NULL WHERE id = $3", [
       text,
       hash,
       place.revisionId,

@@ -11,6 +11,7 @@ import {
   addRolePerson,
   beginLine,
   mailsFor,
+  readyToDecide,
   readyToSend,
   SIGNATURE,
   sendInputFor,
@@ -83,6 +84,7 @@ describe('sending for checking', () => {
     expect(body.hash).toMatch(/^[0-9a-f]{64}$/);
     expect(app.live.published).toEqual([{ type: 'revisions', damId, netId }]);
 
+    await readyToDecide(reviewer.caller, input.id);
     const opened = (await reviewer.caller.get(`/revisions/${input.id}`).expect(200)).body;
     const { document } = await openNet(caller, netId);
     expect(opened.payload).toMatchObject({
@@ -132,7 +134,7 @@ describe('sending for checking', () => {
     await place.caller.post(url, { ...input, reasons: blank }).expect(400);
     const gone = { key: 'no longer open', reason: 'Settled since.' };
     await place.caller.post(url, { ...input, reasons: [...input.reasons, gone] }).expect(201);
-    const opened = (await place.reviewer.caller.get(`/revisions/${input.id}`).expect(200)).body;
+    const opened = (await place.caller.get(`/revisions/${input.id}`).expect(200)).body;
     expect(opened.payload.stayedOpen).toHaveLength(input.reasons.length);
     expect(opened.payload.stayedOpen).toContainEqual({
       key: 'openNotes 1',
@@ -242,6 +244,7 @@ describe('several reviewers', () => {
     const url = `/nets/${place.netId}/revisions`;
     const { body } = await place.caller.post(url, input).expect(201);
     expect(body.reviewers.map((each: { name: string }) => each.name)).toEqual(['Remi Okafor', 'Lena Fogh']);
+    for (const { caller } of [place.reviewer, second]) await readyToDecide(caller, input.id);
     return { ...place, second, url: `/revisions/${input.id}/decision`, revisionId: input.id };
   }
 
@@ -306,6 +309,7 @@ describe('withdrawing a sending', () => {
     const input = await sendInputFor(place, place.reviewer.person.id);
     await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
     const back = { decision: 'returned', note: 'Line 3 is off.', ...SIGNATURE };
+    await readyToDecide(place.reviewer.caller, input.id);
     await place.reviewer.caller.post(`/revisions/${input.id}/decision`, back).expect(201);
     await place.caller.post(`/revisions/${input.id}/sending-withdrawals`, reason).expect(409);
   });
@@ -361,6 +365,7 @@ describe('the day by which a check is wanted', () => {
   it('is not reminded of once the revision is decided', async () => {
     const { reminders, reviewer, revisionId } = await sentDue(day(9));
     const back = { decision: 'returned', note: 'Line 3 is off.', ...SIGNATURE };
+    await readyToDecide(reviewer.caller, revisionId);
     await reviewer.caller.post(`/revisions/${revisionId}/decision`, back).expect(201);
     for (const { id, at } of reminders) await remind(id, at);
     expect(await remindersFor(reviewer.person.id)).toEqual([]);

@@ -1,6 +1,6 @@
 import { v7 as uuidv7 } from 'uuid';
 import type { DamRole } from '#shared/contract/actions.ts';
-import type { SendingDto } from '#shared/contract/revisions.ts';
+import type { RevisionDto, SendingDto } from '#shared/contract/revisions.ts';
 import type { Caller } from './caller.ts';
 import { addFinishedNet, batchesOf, lineOf, type NetPlaceFixture, openNet, put } from './net-fixture.ts';
 import type { TestApp } from './test-app.ts';
@@ -48,12 +48,30 @@ export async function reasonsFor(caller: Caller, netId: string) {
   return (body as SendingDto).open.map(({ key }) => ({ key, reason: 'Known to the office.' }));
 }
 
-/** A finished net that was sent to its reviewer. */
+/** A finished net that was sent to its reviewer, who has opened the figures and answered the check list. */
 export async function sentRevision(app: TestApp): Promise<ReadyNet & { revisionId: string }> {
+  const sent = await sentUnopened(app);
+  await readyToDecide(sent.reviewer.caller, sent.revisionId);
+  return sent;
+}
+
+/** A finished net that was sent to its reviewer, who may still read it blind. */
+export async function sentUnopened(
+  app: TestApp,
+  how: { blindFirst?: boolean } = {},
+): Promise<ReadyNet & { revisionId: string }> {
   const place = await readyToSend(app);
-  const input = await sendInputFor(place, place.reviewer.person.id);
+  const input = { ...(await sendInputFor(place, place.reviewer.person.id)), ...how };
   await place.caller.post(`/nets/${place.netId}/revisions`, input).expect(201);
   return { ...place, revisionId: input.id };
+}
+
+/** The reviewer opens the figures and answers every item of the check list, after which nothing holds a decision up. */
+export async function readyToDecide(caller: Caller, revisionId: string): Promise<void> {
+  const { body } = await caller.post(`/revisions/${revisionId}/figure-openings`).expect(201);
+  const { checking } = body as RevisionDto;
+  const answers = checking?.checkList.map(({ id }) => ({ itemId: id, answer: 'yes', remark: '' }));
+  await caller.patch(`/revisions/${revisionId}/check-draft`, { answers }).expect(200);
 }
 
 /** Begins a line, which changes the net and none of its figures. */

@@ -2,9 +2,11 @@ import type { StayedOpen } from '#shared/contract/before-sending.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NoteDto } from '#shared/contract/notes.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
+import type { ReviewDto } from '#shared/contract/review.ts';
 import type { DecisionKind } from '#shared/contract/revisions.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { cautionsChapter } from './cautions.ts';
+import { checkChapter } from './check.ts';
 import { doubtChapter } from './doubt.ts';
 import { inputsChapter } from './inputs.ts';
 import { methodChapter } from './method.ts';
@@ -45,6 +47,8 @@ export type SheetStatus =
       decision: SheetDecision | null;
       /** All records, oldest first: of several reviewers, and of what was withdrawn. */
       records: readonly SheetDecision[];
+      /** What the reviewers did before they decided; nothing of what was sent before it was recorded. */
+      review: ReviewDto;
     };
 
 /** Everything that a calculation sheet is made from. Nothing is worked out anew: all figures are the reading's. */
@@ -129,6 +133,7 @@ export function sheetContent(source: SheetSource): SheetContent {
     exitsChapter,
     stayedOpenChapter,
     notesChapter,
+    checkChapter,
     recordChapter,
     cautionsChapter,
   ];

@@ -1,4 +1,5 @@
 import type { NoteDto } from '#shared/contract/notes.ts';
+import type { ReviewDto } from '#shared/contract/review.ts';
 import type { DecisionDto, RevisionPayload, RevisionSummary } from '#shared/contract/revisions.ts';
 import { namesText } from '#shared/text/names-text.ts';
 import type { SheetDecision, SheetSource } from './content.ts';
@@ -9,12 +10,14 @@ export function revisionSource({
   payload,
   hash,
   summary: { decision, decisions },
+  review,
   notes,
   jobNumber,
 }: {
   payload: RevisionPayload;
   hash: string;
   summary: Pick<RevisionSummary, 'decision' | 'decisions'>;
+  review: ReviewDto;
   notes: readonly NoteDto[];
   jobNumber: string;
 }): SheetSource {
@@ -32,6 +35,7 @@ export function revisionSource({
       stayedOpen: payload.stayedOpen,
       decision: decision && sheetDecision(decision),
       records: decisions.map(sheetDecision),
+      review,
     },
     jobNumber,
     dam,

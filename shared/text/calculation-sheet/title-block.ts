@@ -1,5 +1,5 @@
 import { type FlowNetDocument, singleOf } from '#shared/contract/document.ts';
-import type { NetReading } from '#shared/contract/reading.ts';
+import type { NetReading, TitleBlockCell } from '#shared/contract/reading.ts';
 import { DECISION_WORDS } from '#shared/text/decision-words.ts';
 import { fixedText, NO_FIGURE, plainText } from '#shared/text/number-text.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
@@ -17,18 +17,7 @@ export function titleBlock(source: SheetSource): SheetFact[] {
     { label: 'Dam', value: dam.name },
     { label: 'Drawing', value: drawingText(drawing) },
     { label: 'Job number', value: orNotStated(jobNumber) },
-    { label: 'Scale', value: scaleText(document, reading) },
-    { label: 'Residual', value: residualText(document, reading) },
-    {
-      label: 'Headwater',
-      value: levelText(document, singleOf(document, 'waterLevels')?.value.headwater ?? null),
-    },
-    { label: 'Outlet', value: outletStates(document, reading).join('; ') || NOT_STATED },
-    { label: 'Drops Nd', value: plainText(reading.quantities.drops) },
-    { label: channelsLabel(reading), value: plainText(reading.quantities.channels) },
-    { label: 'Head per drop', value: headPerDropText(document, reading) },
-    { label: 'Permeability', value: permeabilityText(document) },
-    { label: 'Seepage', value: seepageText(document, reading) },
+    ...titleBlockFigures(document, reading).map(({ label, value }) => ({ label, value })),
     { label: 'Net check', value: reading.netCheck?.summary.text ?? NO_FIGURE },
     { label: 'Drawn', value: source.drawnBy.join(', ') || NOT_STATED },
     { label: 'Checked', value: checkedText(status) },
@@ -36,6 +25,30 @@ export function titleBlock(source: SheetSource): SheetFact[] {
       label: 'Calculation',
       value: status.kind === 'draft' ? `DRAFT of ${momentText(status.at)}` : `Revision ${status.label}`,
     },
+  ];
+}
+
+/** The cells that hold figures of the net, each by the name of its cell on the desk. */
+export function titleBlockFigures(
+  document: FlowNetDocument,
+  reading: NetReading,
+): Array<SheetFact & { cell: TitleBlockCell }> {
+  const headwater = singleOf(document, 'waterLevels')?.value.headwater ?? null;
+  const { quantities } = reading;
+  return [
+    { cell: 'scale', label: 'Scale', value: scaleText(document, reading) },
+    { cell: 'residual', label: 'Residual', value: residualText(document, reading) },
+    { cell: 'headwater', label: 'Headwater', value: levelText(document, headwater) },
+    {
+      cell: 'outlet',
+      label: 'Outlet',
+      value: outletStates(document, reading).join('; ') || NOT_STATED,
+    },
+    { cell: 'drops', label: 'Drops Nd', value: plainText(quantities.drops) },
+    { cell: 'channels', label: channelsLabel(reading), value: plainText(quantities.channels) },
+    { cell: 'headPerDrop', label: 'Head per drop', value: headPerDropText(document, reading) },
+    { cell: 'permeability', label: 'Permeability', value: permeabilityText(document) },
+    { cell: 'seepage', label: 'Seepage', value: seepageText(document, reading) },
   ];
 }
 

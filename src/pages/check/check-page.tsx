@@ -5,9 +5,15 @@ import { ButtonLink } from '#client/components/button.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { SheetView } from '#client/features/desk/components/sheet-view.tsx';
 import { createDeskStore } from '#client/features/desk/model/desk-store.ts';
+import { blindQuery } from '#client/features/revisions/api/blind-queries.ts';
 import { revisionListQuery, revisionQuery } from '#client/features/revisions/api/revision-queries.ts';
+import { BlindBeside } from '#client/features/revisions/components/blind-beside.tsx';
+import { CheckList } from '#client/features/revisions/components/check-list.tsx';
+import { CheckWork } from '#client/features/revisions/components/check-work.tsx';
 import { DecisionPanel } from '#client/features/revisions/components/decision-panel.tsx';
+import { FiguresChecked } from '#client/features/revisions/components/figures-checked.tsx';
 import { RecordFacts } from '#client/features/revisions/components/record-facts.tsx';
+import { ReviewRecord } from '#client/features/revisions/components/review-record.tsx';
 import { RevisionChanges } from '#client/features/revisions/components/revision-changes.tsx';
 import { RevisionHistory } from '#client/features/revisions/components/revision-history.tsx';
 import { StayedOpenList } from '#client/features/revisions/components/stayed-open.tsx';
@@ -22,6 +28,7 @@ import type { RevisionDto } from '#shared/contract/revisions.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { NetNotes } from '../desk/net-notes.tsx';
+import { BlindPage } from './blind-page.tsx';
 import { CheckGrid, type CheckPane } from './check-grid.tsx';
 import { CheckTables } from './check-tables.tsx';
 import { FrozenTitleBlock } from './frozen-title-block.tsx';
@@ -34,8 +41,21 @@ const NARROW = '(max-width: 819.98px)';
 /** The reviewer's view of a revision: the frozen record, and apart from it what is worked out when that is asked for. */
 export function CheckPage() {
   const { revisionId = '' } = useParams();
+  const { data: blind } = useSuspenseQuery(blindQuery(revisionId));
+  return blind.view ? (
+    <BlindPage key={revisionId} view={blind.view} />
+  ) : (
+    <OpenCheck key={revisionId} revisionId={revisionId} />
+  );
+}
+
+function OpenCheck({ revisionId }: { revisionId: string }) {
   const { data: revision } = useSuspenseQuery(revisionQuery(revisionId));
-  return <Check key={revisionId} revision={revision} />;
+  return (
+    <CheckWork revision={revision}>
+      <Check revision={revision} />
+    </CheckWork>
+  );
 }
 
 function Check({ revision }: { revision: RevisionDto }) {
@@ -97,7 +117,11 @@ function Check({ revision }: { revision: RevisionDto }) {
           block={<FrozenTitleBlock revision={revision} />}
           check={
             <>
+              <BlindBeside revision={revision} />
+              <FiguresChecked />
+              <CheckList />
               <DecisionPanel revision={revision} />
+              <ReviewRecord review={revision.review} />
               <ProblemNote error={since.error} />
               {since.before && since.comparison ? (
                 <RevisionChanges

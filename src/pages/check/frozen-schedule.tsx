@@ -5,6 +5,7 @@ import { Schedule } from '#client/features/desk/components/schedule.tsx';
 import { ScheduleState } from '#client/features/desk/components/schedule-pane.tsx';
 import { ENTERED_ORDER, type Sort, scheduleLead } from '#client/features/desk/components/schedule-rows.ts';
 import type { DeskStore } from '#client/features/desk/model/desk-state.ts';
+import { TickBox } from '#client/features/revisions/components/tick-box.tsx';
 import { downloadFrom, downloadText } from '#client/lib/download.ts';
 import { apiUrl } from '#client/lib/http.ts';
 import { localeStore } from '#client/lib/locale.ts';
@@ -13,6 +14,7 @@ import { checkText } from '#client/text/revisions.ts';
 import { scheduleText as text } from '#client/text/schedule.ts';
 import type { RevisionPayload } from '#shared/contract/revisions.ts';
 import { BYTE_ORDER_MARK } from '#shared/text/csv.ts';
+import { pointKey } from '#shared/text/figures-to-check.ts';
 import { scheduleCsv } from '#shared/text/schedule-csv.ts';
 
 interface FrozenScheduleProps {
@@ -65,6 +67,7 @@ export function FrozenSchedule({ payload, store, views }: FrozenScheduleProps) {
           sort={sort}
           onSort={setSort}
           onEdit={null}
+          markOf={(pointId, column) => <TickBox figureKey={pointKey(pointId, column)} />}
           selectedIds={selection.kind === 'readingPoint' ? selection.ids : []}
           onSelect={(id) => store.select({ kind: 'readingPoint', ids: [id] })}
         />

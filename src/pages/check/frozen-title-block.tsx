@@ -1,11 +1,13 @@
 import { useMemo } from 'react';
 import { TitleBlock } from '#client/features/desk/components/title-block.tsx';
 import { titleBlockCells } from '#client/features/desk/components/title-block-cells.ts';
+import { TickBox } from '#client/features/revisions/components/tick-box.tsx';
 import { formatFullDay } from '#client/lib/dates.ts';
 import { shortName } from '#client/lib/initials.ts';
 import { revisionStateText } from '#client/text/revisions.ts';
 import { titleBlockText as text } from '#client/text/title-block.ts';
 import type { RevisionDto } from '#shared/contract/revisions.ts';
+import { cellKey } from '#shared/text/figures-to-check.ts';
 
 /** The title block of the frozen record; its figures are the payload's. */
 export function FrozenTitleBlock({ revision }: { revision: RevisionDto }) {
@@ -20,7 +22,15 @@ export function FrozenTitleBlock({ revision }: { revision: RevisionDto }) {
       calculation: summary.label,
     });
   }, [revision]);
-  return <TitleBlock cells={cells} stale={false} open={null} onStep={null} />;
+  return (
+    <TitleBlock
+      cells={cells}
+      stale={false}
+      open={null}
+      onStep={null}
+      markOf={(cell) => <TickBox figureKey={cellKey(cell)} />}
+    />
+  );
 }
 
 function checkedIn({ state, decision, decisions, reviewers }: RevisionDto['summary']): string {

@@ -9,12 +9,14 @@ import { ProblemNote } from '#client/components/problem-note.tsx';
 import { ArchivePanel } from '#client/features/archive/components/archive-panel.tsx';
 import { useArchiveDam, useEditDam } from '#client/features/dams/api/dam-mutations.ts';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
+import { CheckListPanel } from '#client/features/dams/components/check-list-panel.tsx';
 import { DamFacts } from '#client/features/dams/components/dam-facts.tsx';
 import { DamForm } from '#client/features/dams/components/dam-form.tsx';
 import { InviteMemberForm } from '#client/features/dams/components/invite-member-form.tsx';
 import { MemberTable } from '#client/features/dams/components/member-table.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { paths } from '#client/lib/paths.ts';
+import { checkListSettingsText } from '#client/text/check-work.ts';
 import { commonText } from '#client/text/common.ts';
 import { damSettingsText as settings } from '#client/text/dam-settings.ts';
 import { damsText as text } from '#client/text/dams.ts';
@@ -52,6 +54,16 @@ export function DamSettingsPage() {
                 </div>
               </Panel>
             ) : null}
+            <Panel title={checkListSettingsText.title}>
+              <Part>
+                <div className="p-3.5">
+                  <CheckListPanel
+                    damId={dam.id}
+                    canEdit={dam.can.includes('dam.edit') && dam.archivedAt === null}
+                  />
+                </div>
+              </Part>
+            </Panel>
           </div>
           <div className="flex flex-col gap-4">
             <FactsPanel dam={dam} />

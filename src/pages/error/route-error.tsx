@@ -7,6 +7,7 @@ import { PublicLayout } from '#client/layouts/public-layout.tsx';
 import { ApiProblem } from '#client/lib/api-problem.ts';
 import { paths } from '#client/lib/paths.ts';
 import { onSignInMoment } from '#client/lib/sign-in-state.ts';
+import { blindText } from '#client/text/check-work.ts';
 import { problemText as text } from '#client/text/problems.ts';
 import { NotFoundPage } from './not-found-page.tsx';
 
@@ -17,6 +18,7 @@ export function RouteError({ error }: { error: unknown }) {
   if (isNotFound(error)) return <NotFoundPage />;
   if (error instanceof ApiProblem && error.code === 'token-invalid')
     return <Failed title={text.linkInvalid} detail={error.message} error={error} retry={retry} />;
+  if (error instanceof ApiProblem && error.code === 'figures-kept-back') return <KeptBack error={error} />;
   if (error instanceof ApiProblem)
     return <Failed title={error.problem.title} detail={error.message} error={error} retry={retry} />;
   if (isMissingScript(error))
@@ -42,6 +44,22 @@ function useRetry(): () => void {
     queryClient.removeQueries({ predicate: (query) => query.state.status === 'error' });
     void navigate(location, { replace: true });
   };
+}
+
+/** The way on is the check, where the figures can be opened or points be read blind. */
+function KeptBack({ error }: { error: ApiProblem }) {
+  const revisionId = String(error.problem.extra?.revisionId ?? '');
+  return (
+    <PublicLayout title={error.problem.title}>
+      <p className="mb-3">{error.message}</p>
+      <div className="mt-4 flex flex-wrap gap-2">
+        <ButtonLink look="main" to={paths.revision(revisionId)}>
+          {blindText.openCheck}
+        </ButtonLink>
+        <ButtonLink to={paths.dams}>{text.toDams}</ButtonLink>
+      </div>
+    </PublicLayout>
+  );
 }
 
 interface FailedProps {

@@ -16,9 +16,9 @@ export function SheetPage() {
   const { revisionId = '' } = useParams();
   const { data: revision } = useSuspenseQuery(revisionQuery(revisionId));
   const content = useMemo(() => {
-    const { payload, summary, notes } = revision;
+    const { payload, summary, notes, review } = revision;
     const { hash } = summary;
-    return sheetContent(revisionSource({ payload, hash, summary, notes, jobNumber: '' }));
+    return sheetContent(revisionSource({ payload, hash, summary, review, notes, jobNumber: '' }));
   }, [revision]);
   return (
     <main id="content" className="mx-auto max-w-[1000px] bg-white px-6 py-5 text-base print:p-0">

@@ -1,3 +1,7 @@
+import { mkdirSync, writeFileSync } from 'node:fs';
+import path from 'node:path';
+import type { ParsedMail } from 'mailparser';
+import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import {
@@ -118,10 +122,19 @@ describe('from a scan to a decision', () => {
     const mail = await mailTo(world.reviewer.email);
     expect(mail.subject).toContain('Harrow Fen Dam');
     expect(mail.subject).toContain('Spillway axis');
-    const link = /https?:\/\/\S+\/revisions\/\S+/.exec(mail.text ?? '')?.[0] ?? '';
+    // With a picture of the section in it, made of the sheet's tiles.
+    const [picture] = mail.attachments;
+    expect(picture).toMatchObject({ contentType: 'image/jpeg', related: true });
+    expect(picture?.size).toBeLessThanOrEqual(150_000);
+    expect(mail.html).toContain('alt="Spillway axis as frozen with revision A: the traced net over the scan');
+    for (const { name } of INSTRUMENTS) expect(mail.text).toMatch(new RegExp(`^${name} .*±`, 'm'));
+    keepToLookAt('reviewer-mail.html', String(mail.html));
 
     reviewer = await world.pageOf(world.reviewer);
-    await reviewer.goto(link);
+    await reviewer.goto(revisionLink(mail));
+    // The figures are kept back until the reviewer has said how the revision is to be read.
+    await reviewer.getByRole('button', { name: 'Show the figures without reading blind' }).click();
+    await reviewer.getByRole('button', { name: 'Show the figures', exact: true }).click();
     await reviewer.getByText('Revision A, shown here').waitFor();
     await scheduleRow(reviewer, 'P2').waitFor();
     await reviewer.getByText('The apron was underpinned in 1974.').waitFor();
@@ -136,12 +149,86 @@ describe('from a scan to a decision', () => {
     expect(answer.text).toContain('Trace the last equipotential again.');
   });
 
-  it('the next revision is accepted; the one before it stays as it was', async () => {
+  it('the reviewer holds the frozen figures against a solution and the present engine, which touches no record', async () => {
+    const records = () => world.server.db.query('SELECT id, payload, payload_hash FROM revision');
+    const before = await records();
+    const written: string[] = [];
+    reviewer.on('request', (request) => request.method() !== 'GET' && written.push(request.url()));
+
+    await reviewer.getByRole('button', { name: 'Independent solution' }).click();
+    await reviewer.getByText(/no part of the record of revision A/).waitFor();
+    await reviewer.getByRole('button', { name: 'Solve the section' }).click();
+    const beside = reviewer.getByRole('table', { name: 'Heads at the reading points' });
+    const row = beside.getByRole('row').filter({ hasText: 'P2' });
+    await row.waitFor();
+    const [traced = 0, solved = 0] = (await row.getByRole('cell').allTextContents()).map(Number.parseFloat);
+    // u = γw(h − z), so the exact head is z + u/γw: after Harr (1962).
+    const exact = 92 + exactPressure(0, 92) / 9.81;
+    expect(Math.abs(solved - exact)).toBeLessThan(0.05);
+    expect(Math.abs(traced - exact)).toBeLessThan(0.25);
+
+    await reviewer.getByRole('button', { name: 'Run again' }).click();
+    await reviewer.getByRole('button', { name: 'Run again' }).click();
+    await reviewer.getByText(/^All \d+ figures are equal to the last digit shown/).waitFor();
+    expect(await records()).toEqual(before);
+    expect(written.filter((url) => url.includes('/revisions'))).toEqual([]);
+  });
+
+  it('the next revision is read blind first, which then stands beside the engineer’s figures', async () => {
     await sendForChecking(engineer);
     await engineer.getByText(/^Revision B has been sent/).waitFor();
-    const [revisionB] = await world.server.db.query("SELECT id FROM revision WHERE label = 'B'");
-    await reviewer.goto(`/revisions/${revisionB.id}`);
+    const mail = await mailTo(world.reviewer.email, 'revision B');
+    expect(mail.text).toContain('Since the revision before:');
+    const answers: string[] = [];
+    reviewer.on('response', async (response) => {
+      if (response.url().includes('/api/')) answers.push(await response.text().catch(() => ''));
+    });
+    await reviewer.goto(revisionLink(mail));
+    const hand = await takeDesk(reviewer);
+    await reviewer.getByLabel('Drops of the whole net').fill(String(DROPS));
+    // One point by its coordinates, one by a press on the sheet where the calibration gives its place.
+    await reviewer.getByLabel('Read P2').check();
+    await reviewer.getByLabel('Elevation z of P2').fill('92');
+    await reviewer.getByLabel('Drops lost of P2').fill('3');
+    await reviewer.getByLabel('Read P1').check();
+    await reviewer.getByRole('button', { name: 'Place P1 on the sheet' }).click();
+    await hand.click([-6, 94.5]);
+    await expect
+      .poll(async () => Number.parseFloat(await reviewer.getByLabel('Elevation z of P1').inputValue()))
+      .toBeCloseTo(94.5, 0);
+    await reviewer.getByLabel('Drops lost of P1').fill('1.5');
+    expect(answers.join()).not.toMatch(/porePressure|dropsLost/);
+    await reviewer.getByRole('button', { name: 'Seal the reading and show the figures' }).click();
+    const beside = reviewer.getByRole('region', { name: 'Read blind' });
+    await beside.getByRole('table').waitFor();
+    const own = 9.81 * (HEADWATER - 3 * ((HEADWATER - TAILWATER) / DROPS) - 92);
+    const point = beside.getByRole('rowgroup').filter({ hasText: 'P2' });
+    const row = point.getByRole('row').filter({ hasText: /^u/ });
+    expect(await row.first().textContent()).toContain(own.toFixed(1));
+  });
+
+  it('figures are ticked by key, the check list is answered, and the revision is accepted', async () => {
     await signAs(reviewer, world.reviewer);
+    await reviewer.getByRole('button', { name: 'Accept', exact: true }).click();
+    await reviewer.getByText(/items of the check list are not answered/).waitFor();
+    const tick = (what: string) => reviewer.getByRole('checkbox', { name: `Checked: ${what}` });
+    await tick('P1, elevation').focus();
+    await reviewer.keyboard.press('Space');
+    await reviewer.keyboard.press('ArrowRight');
+    await reviewer.keyboard.press('Space');
+    await tick('Title block, Drops Nd').check();
+    await reviewer.getByText(/^3 of \d+ ticked$/).waitFor();
+    for (const yes of await reviewer.getByRole('radio', { name: 'Yes' }).all()) await yes.check();
+    await reviewer.getByText('13 of 13 answered').waitFor();
+    // Kept on the server: another visit finds them.
+    await expect
+      .poll(async () => {
+        const [draft] = await world.server.db.query(
+          'SELECT cardinality(ticks) AS ticks, jsonb_array_length(answers) AS answers FROM check_draft',
+        );
+        return draft;
+      })
+      .toEqual({ ticks: 3, answers: 13 });
     await reviewer.getByRole('button', { name: 'Accept', exact: true }).click();
     await reviewer
       .getByText(/^Accepted by/)
@@ -155,12 +242,69 @@ describe('from a scan to a decision', () => {
       { label: 'B', decision: 'accepted' },
     ]);
   });
+
+  it('the two revisions stand beside one another, by figures and over the same sheet', async () => {
+    await reviewer.getByRole('link', { name: /^Compare: revision A/ }).click();
+    const points = reviewer.getByRole('region', { name: 'Reading points' });
+    const row = points.getByRole('row').filter({ hasText: 'P2' });
+    await row.waitFor();
+    const cells = (await row.getByRole('cell').allTextContents()).map(Number.parseFloat);
+    // Elevation, total head and pressure of both, each with its difference; nothing was changed between them.
+    expect(cells.slice(0, 3)).toEqual([92, 92, 0]);
+    expect(cells[3]).toBe(cells[4]);
+    expect([cells[5], cells[8]]).toEqual([0, 0]);
+    await reviewer.getByRole('application', { name: /^Sheet of .*revision A/ }).waitFor();
+    await reviewer.getByLabel('Show', { exact: true }).selectOption('Side by side');
+    await reviewer.getByText(/Both views show the same part of the section/).waitFor();
+    await reviewer.getByRole('application', { name: /^Sheet of .*revision B/ }).waitFor();
+  });
+
+  it('the engineer follows the mail about the acceptance and takes the signed calculation sheet', async () => {
+    const mail = await mailTo(world.engineer.email, 'Accepted');
+    expect(mail.text).toContain('Signed: Remi Okafor, Reviewing engineer');
+    await engineer.goto(revisionLink(mail));
+    const panel = engineer.getByRole('region', { name: 'Calculation sheet' });
+    await panel.getByRole('button', { name: 'Calculation sheet' }).click();
+    const link = panel.getByRole('link', { name: /^Download PDF/ });
+    await link.waitFor({ timeout: 60_000 });
+    const answer = await engineer.request.get((await link.getAttribute('href')) ?? '');
+    const text = await textOfPdf(await answer.body());
+    const [{ payload_hash }] = await world.server.db.query(
+      "SELECT payload_hash FROM revision WHERE label = 'B'",
+    );
+    expect(text).toContain(payload_hash);
+    for (const signed of [/Remi Okafor/, /Reviewing engineer/]) expect(text).toMatch(signed);
+    for (const checked of [/Read blind/, /3 of \d+/, /Check list of the dam, as it stood/])
+      expect(text).toMatch(checked);
+    expect(text).not.toContain('DRAFT');
+  });
 });
 
-/** The newest mail to an address, once it has been delivered. */
-async function mailTo(address: string) {
+const revisionLink = ({ text = '' }: ParsedMail) => /https?:\/\/\S+\/revisions\/\S+/.exec(text)?.[0] ?? '';
+
+/** With MAIL_FOLDER set mails are kept there, to be looked at. */
+function keepToLookAt(name: string, html: string): void {
+  const folder = process.env.MAIL_FOLDER;
+  if (!folder) return;
+  mkdirSync(folder, { recursive: true });
+  writeFileSync(path.join(folder, name), html);
+}
+
+async function textOfPdf(pdf: Buffer): Promise<string> {
+  const document = await getDocument({ data: new Uint8Array(pdf), verbosity: 0 }).promise;
+  const pages = Array.from({ length: document.numPages }, async (_, i) => {
+    const { items } = await (await document.getPage(i + 1)).getTextContent();
+    return items.map((item) => ('str' in item ? item.str : '')).join(' ');
+  });
+  return (await Promise.all(pages)).join('\n');
+}
+
+/** The newest mail to an address whose subject says this, once it has been delivered. */
+async function mailTo(address: string, subject = ''): Promise<ParsedMail> {
   const find = () =>
-    smtp.received.findLast((mail) => [mail.to].flat().some((to) => to?.text.includes(address)));
+    smtp.received.findLast(
+      (mail) => mail.subject?.includes(subject) && [mail.to].flat().some((to) => to?.text.includes(address)),
+    );
   await expect.poll(find, { timeout: 15_000 }).toBeDefined();
   return find()!;
 }

@@ -38,6 +38,7 @@ const source = (more: Partial<SheetSource> = {}): SheetSource => ({
     ],
     decision: ACCEPTED,
     records: [ACCEPTED],
+    review: { openings: [], blindReadings: [], checks: [] },
   },
   jobNumber: 'J-2207',
   dam: { name: 'High Fell' },

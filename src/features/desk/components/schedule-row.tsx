@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { classNames } from '#client/components/class-names.ts';
 import { measuredText } from '#client/text/measured.ts';
 import { scheduleViewText } from '#client/text/panes.ts';
@@ -15,6 +16,8 @@ const LONGEST_NAME = 120;
 const CELL = 'border-b border-rule-2 px-2 py-[3px]';
 const FIGURE = `${CELL} text-right`;
 
+export type FigureMark = (pointId: string, column: HideableColumn) => ReactNode;
+
 interface RowProps {
   point: PointReading;
   document: FlowNetDocument;
@@ -30,6 +33,7 @@ interface RowProps {
   onToggle: () => void;
   /** Shows the point on the sheet; left out where there is none beside the table. */
   onLook?: (() => void) | undefined;
+  markOf?: FigureMark | undefined;
 }
 
 /** One reading point: its name and place, edited where they stand, and its figures or the reason why there are none. */
@@ -45,6 +49,7 @@ export function ScheduleRow({
   open,
   onToggle,
   onLook,
+  markOf,
 }: RowProps) {
   const name = point.name || text.unnamed;
   return (
@@ -65,8 +70,21 @@ export function ScheduleRow({
         <NameCell point={point} document={document} onEdit={onEdit} />
         <PressureOnPhone point={point} document={document} />
       </th>
-      <PlaceCells point={point} document={document} onEdit={onEdit} name={name} hidden={hidden} />
-      <FigureCells point={point} document={document} unfinished={unfinished} hidden={hidden} />
+      <PlaceCells
+        point={point}
+        document={document}
+        onEdit={onEdit}
+        name={name}
+        hidden={hidden}
+        markOf={markOf}
+      />
+      <FigureCells
+        point={point}
+        document={document}
+        unfinished={unfinished}
+        hidden={hidden}
+        markOf={markOf}
+      />
       {measured === undefined ? null : (
         <MeasuredCells measured={measured} document={document} hidden={hidden} />
       )}
@@ -140,15 +158,26 @@ function PlaceCells({
   onEdit,
   name,
   hidden,
-}: Pick<RowProps, 'point' | 'document' | 'onEdit' | 'hidden'> & { name: string }) {
+  markOf,
+}: Pick<RowProps, 'point' | 'document' | 'onEdit' | 'hidden' | 'markOf'> & { name: string }) {
   const shows = shownOf(hidden);
   const value = document.entities[point.id]?.value;
   const figures = pointFigures(point, document);
   if (!onEdit || value?.kind !== 'readingPoint' || point.offset === null) {
     return (
       <>
-        {shows('offset') ? <td className={FIGURE}>{figures.offset}</td> : null}
-        {shows('elevation') ? <td className={FIGURE}>{figures.elevation}</td> : null}
+        {shows('offset') ? (
+          <td className={FIGURE}>
+            {markOf?.(point.id, 'offset')}
+            {figures.offset}
+          </td>
+        ) : null}
+        {shows('elevation') ? (
+          <td className={FIGURE}>
+            {markOf?.(point.id, 'elevation')}
+            {figures.elevation}
+          </td>
+        ) : null}
       </>
     );
   }
@@ -193,7 +222,8 @@ function FigureCells({
   document,
   unfinished,
   hidden,
-}: Pick<RowProps, 'point' | 'document' | 'unfinished' | 'hidden'>) {
+  markOf,
+}: Pick<RowProps, 'point' | 'document' | 'unfinished' | 'hidden' | 'markOf'>) {
   const figures = pointFigures(point, document);
   const columns = FIGURE_COLUMNS.filter(shownOf(hidden));
   if (point.status === 'withheld') {
@@ -211,10 +241,11 @@ function FigureCells({
           words={text.abovePhreatic}
         />
       ) : (
-        <HeadCells figures={figures} columns={columns} />
+        <HeadCells figures={figures} columns={columns} markOf={(column) => markOf?.(point.id, column)} />
       )}
       {withPressure ? (
         <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+          {markOf?.(point.id, 'porePressure')}
           <b className="font-semibold">{figures.porePressure}</b>
           {above ? null : <span className="text-ink-2">{figures.porePressurePlusMinus}</span>}
           {!above && point.findings.length > 0 ? <span className="text-attention"> ?</span> : null}
@@ -237,20 +268,33 @@ function SpanCell({ span, className, words }: { span: number; className: string;
 function HeadCells({
   figures,
   columns,
+  markOf,
 }: {
   figures: ReturnType<typeof pointFigures>;
   columns: readonly (typeof FIGURE_COLUMNS)[number][];
+  markOf: (column: HideableColumn) => ReactNode;
 }) {
   return (
     <>
-      {columns.includes('dropsLost') ? <td className={FIGURE}>{figures.dropsLost}</td> : null}
+      {columns.includes('dropsLost') ? (
+        <td className={FIGURE}>
+          {markOf('dropsLost')}
+          {figures.dropsLost}
+        </td>
+      ) : null}
       {columns.includes('totalHead') ? (
         <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+          {markOf('totalHead')}
           {figures.totalHead}
           <span className="text-ink-2">{figures.totalHeadPlusMinus}</span>
         </td>
       ) : null}
-      {columns.includes('pressureHead') ? <td className={FIGURE}>{figures.pressureHead}</td> : null}
+      {columns.includes('pressureHead') ? (
+        <td className={FIGURE}>
+          {markOf('pressureHead')}
+          {figures.pressureHead}
+        </td>
+      ) : null}
     </>
   );
 }

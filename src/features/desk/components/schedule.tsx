@@ -7,7 +7,7 @@ import { scheduleText as text } from '#client/text/schedule.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { NetReading, PointReading } from '#shared/contract/reading.ts';
 import { type Edit, removePoint } from './schedule-edits.ts';
-import { ScheduleRow } from './schedule-row.tsx';
+import { type FigureMark, ScheduleRow } from './schedule-row.tsx';
 import {
   type HideableColumn,
   nextSort,
@@ -38,6 +38,8 @@ interface ScheduleProps {
   onExplain?: ((id: string) => void) | undefined;
   /** Brings a point into view on the sheet; left out where there is none beside the table. */
   onLook?: ((point: PointReading) => void) | undefined;
+  /** What stands before a figure, such as a tick; left out where nothing does. */
+  markOf?: FigureMark | undefined;
 }
 
 const NONE: readonly HideableColumn[] = [];
@@ -56,6 +58,7 @@ export function Schedule({
   onMeasured,
   onExplain,
   onLook,
+  markOf,
 }: ScheduleProps) {
   const [openId, setOpenId] = useState<string | null>(null);
   const { measured } = reading;
@@ -98,6 +101,7 @@ export function Schedule({
               onSelect={onSelect}
               open={openId === point.id}
               onToggle={() => setOpenId(openId === point.id ? null : point.id)}
+              markOf={markOf}
               onLook={onLook && point.sheetAt !== null ? () => onLook(point) : undefined}
             />
             {openId === point.id ? (

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { classNames } from '#client/components/class-names.ts';
 import { sentenceText } from '#client/lib/figures.ts';
 import { notesText } from '#client/text/notes.ts';
@@ -34,6 +35,8 @@ interface TitleBlockProps {
   onStep: ((id: CellId) => void) | null;
   /** Notes on single cells; left out where none are shown. */
   notes?: CellNotesOf;
+  /** What stands in the corner of a cell, such as a tick; left out where nothing does. */
+  markOf?: (id: CellId) => ReactNode;
 }
 
 interface CellNotesOf {
@@ -47,7 +50,7 @@ interface CellNotesOf {
  * The title block at the foot of the margin: each cell shows one fact and its state, and pressing it does that step.
  * Cells are ruled by a one-pixel gap over ink, so that they close up whatever their height.
  */
-export function TitleBlock({ cells, stale, open, onStep, notes }: TitleBlockProps) {
+export function TitleBlock({ cells, stale, open, onStep, notes, markOf }: TitleBlockProps) {
   return (
     <section
       aria-label={text.name}
@@ -58,6 +61,7 @@ export function TitleBlock({ cells, stale, open, onStep, notes }: TitleBlockProp
         <div key={cell.id} className={classNames('group relative grid min-w-0', SPANS[cell.id])}>
           <Cell cell={cell} open={open === cell.id} onStep={onStep} />
           {notes ? <CellNotes cell={cell} notes={notes} /> : null}
+          {markOf ? <span className="absolute top-1 right-0">{markOf(cell.id)}</span> : null}
         </div>
       ))}
     </section>

@@ -11,7 +11,7 @@ export function DecisionPanel({ revision }: { revision: RevisionDto }) {
   const { id, state, reviewers, decisions, supersededBy } = summary;
   const asked = reviewers.filter((person) => decisions.every((each) => each.decidedBy.id !== person.id));
   return (
-    <section aria-labelledby="decision" className="flex flex-col gap-2 px-3 py-2">
+    <section aria-labelledby="decision" className="flex flex-col gap-2 border-t border-rule px-3 py-2">
       <h2 id="decision" className="m-0 text-base font-bold">
         {text.decisionTitle}
       </h2>
@@ -25,7 +25,7 @@ export function DecisionPanel({ revision }: { revision: RevisionDto }) {
           <p className="m-0 text-ink-2">{decideRefusal}</p>
         </div>
       ) : null}
-      {state === 'waiting' && decideRefusal === null ? <DecisionForm revisionId={id} /> : null}
+      {state === 'waiting' && decideRefusal === null ? <DecisionForm revision={revision} /> : null}
       {canWithdrawAcceptance ? <AcceptanceWithdrawal revisionId={id} /> : null}
       {canWithdrawSending ? <SendingWithdrawal revisionId={id} /> : null}
     </section>

@@ -3,7 +3,7 @@ import { type FormEvent, useState } from 'react';
 import { v7 as uuidv7 } from 'uuid';
 import { Button } from '#client/components/button.tsx';
 import { Actions, Dialog } from '#client/components/dialog.tsx';
-import { TextArea, TextField } from '#client/components/field.tsx';
+import { CheckField, TextArea, TextField } from '#client/components/field.tsx';
 import { ProblemNote } from '#client/components/problem-note.tsx';
 import { commonText } from '#client/text/common.ts';
 import { sendingText as text } from '#client/text/revisions.ts';
@@ -52,6 +52,7 @@ function SendForm({
     free.length === 1 ? free.map(({ person }) => person.id) : [],
   );
   const [dueOn, setDueOn] = useState('');
+  const [blindFirst, setBlindFirst] = useState(false);
   const [message, setMessage] = useState('');
   const [fault, setFault] = useState<string | null>(null);
   const [reasons, setReasons] = useState<Reasons>({});
@@ -64,6 +65,7 @@ function SendForm({
     reviewerIds,
     dueOn: dueOn || null,
     message,
+    blindFirst,
     changeNumber,
     reasons: sending.open.map(({ key }) => ({ key, reason: reasons[key] ?? '' })),
   });
@@ -98,6 +100,12 @@ function SendForm({
         className="max-w-[220px]"
         value={dueOn}
         onChange={(event) => setDueOn(event.target.value)}
+      />
+      <CheckField
+        label={text.blindFirst}
+        hint={text.blindFirstHint}
+        checked={blindFirst}
+        onChange={(event) => setBlindFirst(event.target.checked)}
       />
       <TextArea
         label={text.message}
