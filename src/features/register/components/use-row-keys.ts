@@ -15,7 +15,7 @@ export function useRowKeys(search: RefObject<HTMLInputElement | null>): void {
       if (!target) return;
       event.preventDefault();
       target.focus();
-      if (target === search.current) target.select();
+      if (target instanceof HTMLInputElement) target.select();
     };
     document.addEventListener('keydown', onKey);
     return () => document.removeEventListener('keydown', onKey);
