@@ -28,7 +28,9 @@ interface SummaryRow {
 const SUMMARIES = `
   SELECT n.id, n.section_id, n.name, n.archived_at, n.change_number, n.unit_system, m.datum,
     (SELECT (e.value->>'drops')::float8 FROM document_entity e
-      WHERE e.owner_id = n.id AND e.kind = 'netCount' AND NOT e.removed) AS drops,
+      WHERE e.owner_id = n.id AND e.kind = 'netCount' AND NOT e.removed
+        -- A count is a figure too, which who may still read blind counts for themselves.
+        AND figures_kept_back(r.id, $1::uuid) IS NOT TRUE) AS drops,
     (SELECT count(*)::int FROM note o WHERE o.net_id = n.id AND o.state <> 'closed') AS open_notes,
     (SELECT count(*)::int FROM note o WHERE o.net_id = n.id AND ${isUnreadBy('$1')}
       AND EXISTS (SELECT 1 FROM membership b WHERE b.dam_id = m.id AND b.person_id = $1::uuid)) AS unread_notes,

@@ -66,7 +66,7 @@ describe('a frozen revision', () => {
     for (const row of [a, b]) {
       expect(createHash('sha256').update(row.payload).digest('hex')).toBe(row.payload_hash);
       // RFC 8785: members sorted, no white space between them.
-      expect(row.payload).toMatch(/^\{"dam":\{"datum":/);
+      expect(row.payload).toMatch(/^\{"blindFirst":false,"dam":\{"datum":/);
     }
     expect(a.previous_hash).toBeNull();
     expect(b.previous_hash).toBe(a.payload_hash);

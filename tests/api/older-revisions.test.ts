@@ -28,11 +28,10 @@ async function olderRevision(change: (reading: Record<string, unknown>) => objec
   const text = canonicalize({ ...asThen, ...older })!;
   const hash = createHash('sha256').update(text).digest('hex');
   await withDataSource(app.database.ownerUrl, (db) =>
-    db.query("UPDATE revision SET payload = $1, payload_hash = $2, engine_version = '1', blind_first = NULL WHERE id = $3", [
-      text,
-      hash,
-      place.revisionId,
-    ]),
+    db.query(
+      "UPDATE revision SET payload = $1, payload_hash = $2, engine_version = '1', blind_first = NULL WHERE id = $3",
+      [text, hash, place.revisionId],
+    ),
   );
   return { ...place, hash };
 }

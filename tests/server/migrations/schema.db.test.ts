@@ -62,7 +62,7 @@ describe('the migrations', () => {
 });
 
 describe('the role the server uses', () => {
-  const APPEND_ONLY = ['event', 'revision', 'decision', 'artifact'];
+  const APPEND_ONLY = ['event', 'revision', 'decision', 'review_record', 'artifact'];
 
   it.each(APPEND_ONLY)('may neither change nor empty the table %s', async (table) => {
     await withDataSource(migrated.appUrl, async (db) => {

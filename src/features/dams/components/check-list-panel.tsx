@@ -43,7 +43,7 @@ function CheckListForm({ damId, items, isUsual }: CheckListFormProps) {
   const notice = useNotice();
   const isChanged = JSON.stringify(edited) !== JSON.stringify(items);
   const set = (next: readonly CheckListItem[] | null) =>
-    save.mutate(next && next.map(({ id, text: words }) => ({ id, text: words.trim() })), {
+    save.mutate(next?.map(({ id, text: words }) => ({ id, text: words.trim() })) ?? null, {
       onSuccess: () => notice(text.saved),
     });
   const submit = () => {
