@@ -9,6 +9,7 @@ import { createCalculationSheetHandler } from './jobs/handlers/make-calculation-
 import { createRenditionHandler } from './jobs/handlers/make-rendition.ts';
 import { createRemindReviewersHandler } from './jobs/handlers/remind-reviewers.ts';
 import { createRenderDrawingHandler } from './jobs/handlers/render-drawing.ts';
+import { createSendDigestHandler } from './jobs/handlers/send-digest.ts';
 import { createSendMailHandler } from './jobs/handlers/send-mail.ts';
 import type { JobHandlers } from './jobs/jobs-port.ts';
 import { createPgBossJobs } from './jobs/pg-boss-jobs.ts';
@@ -17,6 +18,7 @@ import type { MailerPort } from './mail/mailer-port.ts';
 import { createOutboxFolderMailer } from './mail/outbox-folder-mailer.ts';
 import { createSmtpMailer } from './mail/smtp-mailer.ts';
 import { requeueCalculationSheets } from './services/calculation-sheet-service.ts';
+import { requeueDigests } from './services/digest-queue.ts';
 import { requeueWaitingMails } from './services/mail-delivery.ts';
 import { requeueRenderJobs } from './services/render-job-service.ts';
 import { requeueRenditions } from './services/rendition-job-service.ts';
@@ -56,6 +58,7 @@ export async function compose(config: AppConfig, logger: Logger): Promise<Produc
       await requeueCalculationSheets(readingDeps(deps));
       await requeueRenditions(readingDeps(deps));
       await requeueReminders(deps);
+      await requeueDigests(deps);
     },
     async stop(graceMs) {
       await jobs.stop(graceMs);
@@ -84,6 +87,7 @@ function jobHandlers(deps: AppDeps, mailer: MailerPort): JobHandlers {
     'make-calculation-sheet': createCalculationSheetHandler(deps),
     'make-rendition': createRenditionHandler(deps),
     'remind-reviewers': createRemindReviewersHandler(deps),
+    'send-digest': createSendDigestHandler(deps),
     // Where mails are read on a page of ours their links have to stay.
     'send-mail': createSendMailHandler({ ...deps, mailer, forgetLinks: smtpUrl !== null || production }),
   };

@@ -29,6 +29,7 @@ const publicPages = [
     '/reset-password',
     async () => (await import('./pages/password/password-pages.tsx')).ResetPasswordPage,
   ),
+  page('/stop-digest', async () => (await import('./pages/stop-digest/stop-digest-page.tsx')).StopDigestPage),
 ];
 
 const signedInPages = [
@@ -59,6 +60,10 @@ const signedInPages = [
   page('/revisions/:revisionId/sheet', async () => (await import('./pages/sheet/sheet-page.tsx')).SheetPage),
   page('/people', async () => (await import('./pages/people/people-page.tsx')).PeoplePage),
   page('/mails', async () => (await import('./pages/mails/mails-page.tsx')).MailsPage),
+  page(
+    '/mails/templates',
+    async () => (await import('./pages/mails/mail-templates-page.tsx')).MailTemplatesPage,
+  ),
   page('/mails/:mailId', async () => (await import('./pages/mails/mail-page.tsx')).MailPage),
   page('/account', async () => (await import('./pages/account/account-page.tsx')).AccountPage),
   <Route key="*" path="*" element={<NotFoundPage />} />,

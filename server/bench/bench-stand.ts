@@ -18,7 +18,13 @@ export interface BenchStand {
 }
 
 /** The product as it is started for use (its built pages when `pages` are looked at), on a database and a storage folder that go away afterwards. */
-export async function openBenchStand({ pages = false } = {}): Promise<BenchStand> {
+export async function openBenchStand({
+  pages = false,
+  env = {},
+}: {
+  pages?: boolean;
+  env?: Record<string, string>;
+} = {}): Promise<BenchStand> {
   if (pages) await ensureClient(projectRoot);
   const storageDir = mkdtempSync(path.join(os.tmpdir(), 'tracehead-bench-'));
   // As root the database runs as another system user, who has to get in.
@@ -40,6 +46,7 @@ export async function openBenchStand({ pages = false } = {}): Promise<BenchStand
     PUBLIC_URL: '',
     LOG_LEVEL: 'error',
     SESSION_SECRET: cluster.secrets.sessionSecret,
+    ...env,
   });
   return {
     address: server.address,

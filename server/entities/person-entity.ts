@@ -1,9 +1,11 @@
 import { Check, Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
+import type { MailTiming } from '#shared/contract/mails.ts';
 
 /** Someone who signs in. Without a password hash the person is invited and has not accepted yet. */
 @Entity('person')
 @Index('uq_person_email', ['email'], { unique: true })
 @Check('ck_person_email_lower', 'email = lower(email)')
+@Check('ck_person_mail_timing', `mail_timing IN ('atOnce', 'daily', 'off')`)
 export class PersonEntity {
   @PrimaryColumn('uuid') id!: string;
   @Column('text') email!: string;
@@ -11,6 +13,10 @@ export class PersonEntity {
   @Column('text', { nullable: true }) passwordHash!: string | null;
   @Column('boolean', { default: false }) admin!: boolean;
   @Column('timestamptz', { nullable: true }) deactivatedAt!: Date | null;
+  /** How notices that may wait are mailed. */
+  @Column('text', { default: 'atOnce' }) mailTiming!: MailTiming;
+  /** IANA name; the daily digest is made by its clock. */
+  @Column('text', { default: 'UTC' }) timeZone!: string;
   @Column('timestamptz', { default: () => 'now()' }) createdAt!: Date;
 }
 

@@ -15,7 +15,7 @@ export async function authorise(
   deps: AppDeps,
 ): Promise<{ actor: Actor | null; scope: DamScope | null }> {
   const actor = (req.user as Actor | undefined) ?? null;
-  if (access.who === 'public') return { actor, scope: null };
+  if (access.who === 'public' || access.who === 'signedLink') return { actor, scope: null };
   if (!actor) throw notSignedIn();
   if (access.who === 'signedIn') return { actor, scope: null };
   if (access.who === 'global') {

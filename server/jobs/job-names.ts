@@ -12,6 +12,7 @@ export const QUEUES: Record<JobName, QueueRules> = {
   // One page may take three minutes and a file may have hundreds; two at once would share two cores to no end.
   'render-drawing': { concurrency: 1, expireInSeconds: 20 * 60 * 60 },
   'send-mail': { concurrency: 2, expireInSeconds: 10 * 60 },
+  'send-digest': { concurrency: 1, expireInSeconds: 10 * 60 },
   'make-calculation-sheet': { concurrency: 1, expireInSeconds: 10 * 60 },
   'make-rendition': { concurrency: 1, expireInSeconds: 20 * 60 },
   'remind-reviewers': { concurrency: 1, expireInSeconds: 10 * 60 },

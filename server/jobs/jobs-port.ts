@@ -6,6 +6,8 @@ export interface JobIds {
   'render-drawing': string;
   /** Row of `outbox_mail`. */
   'send-mail': string;
+  /** Row of `mail_digest`. */
+  'send-digest': string;
   /** Row of `calculation_sheet`. */
   'make-calculation-sheet': string;
   /** Row of `rendition`. */

@@ -2,13 +2,14 @@ import { mkdir, rename, writeFile } from 'node:fs/promises';
 import path from 'node:path';
 import { createTransport } from 'nodemailer';
 import type { MailerPort, OutgoingMail } from './mailer-port.ts';
+import { nodemailerMessage } from './nodemailer-message.ts';
 
 /** Mail for a machine without a mail server: a folder with an .eml file and a readable text for each mail. */
 export function createOutboxFolderMailer({ folder, from }: { folder: string; from: string }): MailerPort {
   const transport = createTransport({ streamTransport: true, buffer: true, newline: 'windows' });
   return {
     async send(mail) {
-      const { message } = await transport.sendMail({ ...mail, from });
+      const { message } = await transport.sendMail(nodemailerMessage(mail, from));
       await mkdir(folder, { recursive: true });
       const name = path.join(folder, fileName(mail));
       await writeWhole(`${name}.eml`, message as Buffer);

@@ -108,6 +108,7 @@ export function createInvitationService(deps: ServiceDeps) {
         await queueMail(deps, {
           personId: person.id,
           to: person.email,
+          damId,
           ...addedToDamMail({ addedBy: actor.name, ...words, url: `${config.publicUrl}/dams/${damId}` }),
         });
       return person.id;

@@ -2,9 +2,10 @@ import type { DataSource } from 'typeorm';
 import { OutboxMailEntity } from '#server/entities/mail-entity.ts';
 import type { Clock } from '#server/http/clock.ts';
 import type { JobsPort } from '#server/jobs/jobs-port.ts';
-import type { MailerPort } from '#server/mail/mailer-port.ts';
+import { type MailerPort, MailRefused } from '#server/mail/mailer-port.ts';
+import { type DressingDeps, outgoingMail } from './mail-dressing.ts';
 
-export interface DeliveryDeps {
+export interface DeliveryDeps extends DressingDeps {
   db: DataSource;
   jobs: JobsPort;
   mailer: MailerPort;
@@ -35,14 +36,7 @@ export async function deliverMail(deps: DeliveryDeps, mailId: string): Promise<v
     return;
   }
   try {
-    await deps.mailer.send({
-      messageId: mail.messageId,
-      to: mail.toAddress,
-      subject: mail.subject,
-      text: mail.text,
-      html: mail.html,
-      date: mail.createdAt,
-    });
+    await deps.mailer.send(await outgoingMail(deps, mail));
   } catch (error) {
     await noteFailure(deps, mail, error);
     return;
@@ -91,7 +85,7 @@ async function noteFailure(
   error: unknown,
 ): Promise<void> {
   const lastError = (error instanceof Error ? error.message : String(error)).slice(0, MAX_ERROR_LENGTH);
-  const minutes = RETRY_MINUTES[mail.attempts - 1];
+  const minutes = error instanceof MailRefused ? undefined : RETRY_MINUTES[mail.attempts - 1];
   await db.transaction(async (manager) => {
     if (minutes === undefined) {
       await manager.update(

@@ -6,7 +6,7 @@ import { notFound } from '#server/errors/app-error.ts';
 import type { Actor } from '#server/http/route-record.ts';
 import { allowsGlobally } from '#server/policies/dam-policy.ts';
 import { PAGE_SIZE } from '#shared/contract/limits.ts';
-import type { MailDto, mailDetailDto } from '#shared/contract/mails.ts';
+import type { MailDto, mailDetailDto, mailListDto, mailListQuery } from '#shared/contract/mails.ts';
 import { fromCursor, positionTime, toCursor } from './cursor.ts';
 import { hideTokens } from './mail-delivery.ts';
 
@@ -28,16 +28,17 @@ const toDto = (mail: OutboxMailEntity): MailDto => ({
 export async function listMails(
   manager: EntityManager,
   actor: Actor,
-  cursor: string | undefined,
-): Promise<{ items: MailDto[]; nextCursor: string | null }> {
+  { cursor, state }: z.output<typeof mailListQuery>,
+): Promise<z.input<typeof mailListDto>> {
   const query = manager
     .createQueryBuilder(OutboxMailEntity, 'mail')
     .addSelect(positionTime('mail.created_at'), 'position')
     .orderBy('mail.createdAt', 'DESC')
     .addOrderBy('mail.id', 'DESC')
     .limit(PAGE_SIZE + 1);
-  if (!allowsGlobally('mail.read', actor))
-    query.andWhere('mail.personId = :personId', { personId: actor.id });
+  const own: { personId?: string } = allowsGlobally('mail.read', actor) ? {} : { personId: actor.id };
+  if (own.personId) query.andWhere('mail.personId = :personId', own);
+  if (state) query.andWhere('mail.state = :state', { state });
   if (cursor)
     query.andWhere('(mail.created_at, mail.id) < (:at::timestamptz, :id::uuid)', fromCursor(cursor));
   const { entities, raw } = await query.getRawAndEntities<{ position: string }>();
@@ -46,7 +47,8 @@ export async function listMails(
     last && entities.length > PAGE_SIZE
       ? toCursor({ at: raw[PAGE_SIZE - 1]?.position ?? '', id: last.id })
       : null;
-  return { items: entities.slice(0, PAGE_SIZE).map(toDto), nextCursor };
+  const failed = await manager.countBy(OutboxMailEntity, { ...own, state: 'failed' });
+  return { items: entities.slice(0, PAGE_SIZE).map(toDto), nextCursor, failed };
 }
 
 /** @throws AppError not-found, also for mail to somebody else */

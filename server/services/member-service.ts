@@ -54,7 +54,7 @@ export function createMemberService(deps: ServiceDeps) {
       parts: rolesInWords(roles),
       url: `${config.publicUrl}/dams/${dam.id}`,
     });
-    await queueMail(deps, { personId: person.id, to: person.email, ...letter });
+    await queueMail(deps, { personId: person.id, to: person.email, damId: dam.id, ...letter });
   }
 
   return {

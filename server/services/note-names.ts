@@ -6,7 +6,7 @@ import { namedInNoteMail } from '#server/mail/templates/note-mails.ts';
 import { findMentions } from '#shared/text/mentions.ts';
 import { sectionLabel } from '#shared/text/section-title.ts';
 import { drawingTitle } from './drawing-title.ts';
-import { queueMail } from './mail-service.ts';
+import { inLockingOrder, queueMail } from './mail-service.ts';
 import type { NetPlace } from './net-place.ts';
 import { personState } from './person-state.ts';
 import type { ServiceDeps } from './service-deps.ts';
@@ -39,8 +39,8 @@ export async function mailNamed(
     text,
     url: `${deps.config.publicUrl}/nets/${net.id}#note-${note.id}`,
   });
-  for (const person of people) {
+  for (const person of inLockingOrder(people)) {
     if (person.id === actor.id || personState(person) !== 'active') continue;
-    await queueMail(deps, { ...letter, personId: person.id, to: person.email });
+    await queueMail(deps, { ...letter, personId: person.id, to: person.email, damId: dam.id });
   }
 }

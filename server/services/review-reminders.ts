@@ -76,7 +76,7 @@ async function mailReminder(deps: ReminderDeps, { revisionId, kind }: ReviewRemi
     url: `${config.publicUrl}/revisions/${revisionId}`,
   });
   for (const { id, email } of await stillToDecide(manager, row))
-    await queueMail(deps, { ...letter, personId: id, to: email });
+    await queueMail(deps, { ...letter, personId: id, to: email, damId: payload.dam.id });
 }
 
 /** Reviewers of the revision whose decision is still wanted and who can still give it. */

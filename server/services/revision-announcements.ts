@@ -13,7 +13,7 @@ import { DECISION_WORDS } from '#shared/text/decision-words.ts';
 import { sectionTitle } from '#shared/text/section-title.ts';
 import { revisionFacts } from './checking-letters.ts';
 import { writeEvent } from './event-writer.ts';
-import { queueMail } from './mail-service.ts';
+import { inLockingOrder, queueMail } from './mail-service.ts';
 import { personState } from './person-state.ts';
 import type { ServiceDeps } from './service-deps.ts';
 
@@ -67,8 +67,8 @@ async function mailTo(
   ids.delete(actor.id);
   const members = await manager.findBy(MembershipEntity, { damId: payload.dam.id, personId: In([...ids]) });
   const found = await manager.findBy(PersonEntity, { id: In(members.map((each) => each.personId)) });
-  for (const person of found.filter((each) => personState(each) === 'active'))
-    await queueMail(deps, { ...letter, personId: person.id, to: person.email });
+  for (const person of inLockingOrder(found.filter((each) => personState(each) === 'active')))
+    await queueMail(deps, { ...letter, personId: person.id, to: person.email, damId: payload.dam.id });
 }
 
 /** The event of a record on a revision, and what others should fetch again. */

@@ -1,6 +1,7 @@
-import type { LineKind, SheetPoint } from '#shared/contract/document.ts';
+import type { SheetPoint } from '#shared/contract/document.ts';
 import type { SheetContent } from '#shared/text/calculation-sheet/content.ts';
 import type { SectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
+import { LINE_LOOKS, POINT_COLOUR } from './line-looks.ts';
 import {
   type Doc,
   drawLine,
@@ -16,19 +17,6 @@ import {
 import type { SheetFonts } from './sheet-fonts.ts';
 import { textLines } from './text-lines.ts';
 
-/** How a kind of line is printed: colour as on the screen, and a dash of its own, so that a grey print tells them apart. */
-const LOOKS: Record<LineKind, { colour: string; widthPt: number; dashPt: readonly number[] }> = {
-  equipotential: { colour: '#0f6b66', widthPt: 0.9, dashPt: [] },
-  flowLine: { colour: '#a8472b', widthPt: 0.9, dashPt: [9, 1.6] },
-  phreaticLine: { colour: '#2b5ea8', widthPt: 1.1, dashPt: [4, 2.4] },
-  submergedFace: { colour: '#0f6b66', widthPt: 1.6, dashPt: [] },
-  outflowFace: { colour: '#0f6b66', widthPt: 1.6, dashPt: [1.5, 2] },
-  drain: { colour: '#5b5346', widthPt: 1.3, dashPt: [3, 1.4] },
-  impervious: { colour: '#5b5346', widthPt: 1.1, dashPt: [] },
-  ground: { colour: '#5b5346', widthPt: 0.8, dashPt: [] },
-  soilBoundary: { colour: '#5b5346', widthPt: 0.8, dashPt: [5, 1.4, 1, 1.4] },
-};
-const POINT = '#6d2a78';
 const LABEL_PT = 7;
 const BLOCK_MM: Record<Paper, number> = { A4: 62, A3: 78 };
 /** Below the figure, for scale bars and direction of flow. */
@@ -121,20 +109,20 @@ function drawTraces(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlac
       else doc.lineTo(x, y);
     });
   for (const line of figure.lines) {
-    const { colour, widthPt, dashPt } = LOOKS[line.kind];
+    const { colour, widthPt, dashPt } = LINE_LOOKS[line.kind];
     doc.save().lineWidth(widthPt).strokeColor(colour).lineJoin('round');
     if (dashPt.length > 0) doc.dash([...dashPt] as unknown as number);
     path(line.points);
     doc.stroke().restore();
   }
-  doc.lineWidth(0.8).strokeColor(POINT);
+  doc.lineWidth(0.8).strokeColor(POINT_COLOUR);
   for (const profile of figure.profiles) {
     path(profile);
     doc.stroke();
   }
   for (const line of figure.lines) {
     const [first] = line.points;
-    if (first && line.label) labelAt(doc, say, line.label, on(first), LOOKS[line.kind].colour);
+    if (first && line.label) labelAt(doc, say, line.label, on(first), LINE_LOOKS[line.kind].colour);
   }
   for (const { name, at } of figure.knownPoints) {
     const [x, y] = on(at);
@@ -151,8 +139,8 @@ function drawTraces(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlac
   }
   for (const { name, at } of figure.points) {
     const [x, y] = on(at);
-    doc.lineWidth(0.9).strokeColor(POINT).circle(x, y, 2.4).stroke();
-    labelAt(doc, say, name, [x, y], POINT);
+    doc.lineWidth(0.9).strokeColor(POINT_COLOUR).circle(x, y, 2.4).stroke();
+    labelAt(doc, say, name, [x, y], POINT_COLOUR);
   }
 }
 

@@ -4,7 +4,7 @@ import type { SheetEntity } from '#server/entities/drawing-entity.ts';
 import { tileKey, tilePrefix } from '#server/storage/storage-keys.ts';
 import type { StoragePort } from '#server/storage/storage-port.ts';
 
-type TiledSheet = Pick<
+export type TiledSheet = Pick<
   SheetEntity,
   'id' | 'rendition' | 'tileSizePx' | 'maxZoom' | 'readyZoom' | 'tileFormat' | 'widthPx' | 'heightPx'
 >;
@@ -34,13 +34,26 @@ export async function scanPicture(
   signal: AbortSignal,
 ): Promise<Buffer> {
   const wantedPx = Math.max(1, Math.round((widthPt / PT_PER_INCH) * PRINT_DPI));
+  return compressed(await scanRaster(storage, sheet, { crop, wantedPx }, signal));
+}
+
+/**
+ * A part of the scan in grey, at most `wantedPx` wide, from the coarsest level that reaches it.
+ * @throws StorageError `missing` when a tile is not there
+ */
+export async function scanRaster(
+  storage: StoragePort,
+  sheet: TiledSheet,
+  { crop, wantedPx }: { crop: PrintedPart['crop']; wantedPx: number },
+  signal: AbortSignal,
+): Promise<GreyRaster> {
   // Of a sheet whose rest is being drawn, or could not be, there are coarse levels only.
   const zoom = Math.min(zoomFor(sheet.maxZoom, crop[2], wantedPx), sheet.readyZoom ?? sheet.maxZoom);
   const raster = await rasterOf(storage, sheet, crop, zoom, signal);
   const image = sharp(raster.data, { raw: { width: raster.width, height: raster.height, channels: 1 } });
   if (raster.width > wantedPx) image.resize({ width: wantedPx });
-  const grey = await image.toColourspace('b-w').raw().toBuffer({ resolveWithObject: true });
-  return compressed(grey.data, grey.info);
+  const { data, info } = await image.toColourspace('b-w').raw().toBuffer({ resolveWithObject: true });
+  return { data, width: info.width, height: info.height };
 }
 
 /** The coarsest level at which the part has as many pixels as are wanted; the finest where none has. */
@@ -50,7 +63,8 @@ export function zoomFor(maxZoom: number, cropWidthPx: number, wantedPx: number):
   return maxZoom;
 }
 
-interface GreyRaster {
+/** One byte a pixel, row by row. */
+export interface GreyRaster {
   data: Buffer;
   width: number;
   height: number;
@@ -106,10 +120,7 @@ async function pasteTile(raster: GreyRaster, bytes: Buffer, x: number, y: number
 }
 
 /** The best quality that keeps the sheet below its size. */
-async function compressed(
-  data: Buffer,
-  { width, height }: { width: number; height: number },
-): Promise<Buffer> {
+async function compressed({ data, width, height }: GreyRaster): Promise<Buffer> {
   let jpeg = Buffer.alloc(0);
   for (const quality of QUALITIES) {
     jpeg = await sharp(data, { raw: { width, height, channels: 1 } })

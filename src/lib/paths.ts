@@ -18,6 +18,8 @@ export const paths = {
   revisionSheet: (revisionId: string) => `/revisions/${revisionId}/sheet`,
   people: '/people',
   mails: '/mails',
+  failedMails: '/mails?state=failed',
+  mailTemplates: '/mails/templates',
   mail: (mailId: string) => `/mails/${mailId}`,
   account: '/account',
   signIn: '/sign-in',

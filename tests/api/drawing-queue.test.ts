@@ -26,6 +26,7 @@ const start = async () => {
     'make-calculation-sheet': async () => undefined,
     'make-rendition': async () => undefined,
     'remind-reviewers': async () => undefined,
+    'send-digest': async () => undefined,
   });
 };
 

@@ -1,8 +1,11 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { OutboxMailEntity } from '#server/entities/mail-entity.ts';
 import { queueMail } from '#server/services/mail-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
+import { mailKind } from '#shared/contract/mails.ts';
 import type { Caller } from '#tests/support/caller.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
+import { testLetter } from '#tests/support/test-letter.ts';
 import type { TestPerson } from '#tests/support/test-people.ts';
 
 const TOKEN = 'T'.repeat(43);
@@ -22,9 +25,12 @@ const write = (subject: string, personId: string | null = remi.person.id) =>
     queueMail(tx, {
       personId,
       to: 'somebody@harrow-fen.example',
-      subject,
-      text: `http://tracehead.test/reset-password#${TOKEN}`,
-      html: `<a href="http://tracehead.test/reset-password#${TOKEN}">Link</a>`,
+      ...testLetter({
+        kind: 'passwordReset',
+        subject,
+        text: `http://tracehead.test/reset-password#${TOKEN}`,
+        html: `<a href="http://tracehead.test/reset-password#${TOKEN}">Link</a>`,
+      }),
     }),
   );
 const subjects = async (caller: Caller) =>
@@ -65,6 +71,29 @@ describe('the mails', () => {
     await admin.post(`/mails/${id}/send-again`).expect(204);
     expect(app.jobs.queued).toEqual([{ name: 'send-mail', rowId: id, afterSeconds: 0 }]);
     await admin.post('/mails/01900000-0000-7000-8000-000000000000/send-again').expect(404);
+  });
+
+  it('that could not be delivered are counted, listed with their reason and sent again', async () => {
+    const id = await write('to nowhere');
+    const given = { state: 'failed' as const, attempts: 1, lastError: '550 no such mailbox' };
+    await app.db.getRepository(OutboxMailEntity).update({ id }, given);
+    const { body } = await admin.get('/mails?state=failed').expect(200);
+    expect(body).toMatchObject({ failed: 1, items: [{ id, ...given }] });
+    expect((await remi.caller.get('/mails').expect(200)).body.failed).toBe(1);
+    await admin.post(`/mails/${id}/send-again`).expect(204);
+    expect((await admin.get('/mails?state=failed')).body).toMatchObject({ failed: 0, items: [] });
+    expect((await admin.get(`/mails/${id}`)).body).toMatchObject({ state: 'waiting', attempts: 0 });
+    await admin.get('/mails?state=lost').expect(400);
+  });
+
+  it('have templates, which administrators see with sample data and nobody else', async () => {
+    const { body } = await admin.get('/mail-templates').expect(200);
+    const kinds = body.items.map((template: { kind: string }) => template.kind);
+    expect([...kinds].sort()).toEqual([...mailKind.options].sort());
+    const asked = body.items.find((template: { kind: string }) => template.kind === 'sentForChecking');
+    expect(asked).toMatchObject({ mayWait: false, subject: expect.stringContaining('For checking') });
+    expect(asked.html).toContain('<img src="data:image/svg+xml,');
+    await remi.caller.get('/mail-templates').expect(403);
   });
 
   it('are listed page by page, each once', async () => {

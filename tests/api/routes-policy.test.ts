@@ -15,6 +15,7 @@ import { pngDrawing } from '#tests/support/drawing-files.ts';
 import { addFinishedNet, openNet } from '#tests/support/net-fixture.ts';
 import { reasonsFor } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
+import { testLetter } from '#tests/support/test-letter.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
 
 /**
@@ -53,7 +54,11 @@ const PUBLIC = [
   'post /password-resets/complete',
   'post /invitations/look-up',
   'post /invitations/accept',
+  // Leads to the page; the link is no secret and does nothing by being opened.
+  'get /digest-stops',
 ];
+/** Decided by the signature of the link alone: a mail program has neither a session nor its token. */
+const SIGNED_LINK = ['post /digest-stops'];
 /** About the caller alone, or filtered by what the caller may see. */
 const SIGNED_IN = [
   'post /session/end-all',
@@ -65,6 +70,8 @@ const SIGNED_IN = [
   'get /live',
   'get /mails',
   'get /mails/:mailId',
+  'get /me/mail-choice',
+  'put /me/mail-choice',
 ];
 const TARGETS: readonly TargetKind[] = ['dam', 'drawing', 'sheet', 'section', 'net', 'note', 'revision'];
 
@@ -76,7 +83,7 @@ type Outcome = 'passes' | 'sign in first' | 'hidden' | 'refused';
 
 function expectedFor(route: RouteRecord, role: Role): Outcome {
   const { access } = route;
-  if (access.who === 'public') return 'passes';
+  if (access.who === 'public' || access.who === 'signedLink') return 'passes';
   if (role === 'anonymous') return 'sign in first';
   if (access.who === 'signedIn') return 'passes';
   if (access.who === 'global') return MAY_GLOBALLY[access.action].includes(role) ? 'passes' : 'refused';
@@ -136,7 +143,7 @@ async function furnish(netId: string, sheetId: string): Promise<Record<string, s
   await callers.engineer.post(`/nets/${netId}/revisions`, sending).expect(201);
   const letter = { subject: 'Letter', text: 'text', html: '<p>text</p>' };
   const mailId = await inTransaction(app.deps, (tx) =>
-    queueMail(tx, { personId: null, to: 'a@harrow-fen.example', ...letter }),
+    queueMail(tx, { personId: null, to: 'a@harrow-fen.example', ...testLetter() }),
   );
   const sheet = await app.db.getRepository(SheetEntity).findOneByOrFail({ id: sheetId });
   const drawing = await app.db.getRepository(DrawingEntity).findOneByOrFail({ id: sheet.drawingId });
@@ -204,6 +211,7 @@ const outcomeOf = ({ status, code }: Answer): Outcome => {
 describe('the routes', () => {
   it('state a rule each, and those open to all or to all who sign in are the ones thought about', () => {
     const by = (who: string) => routes.filter((route) => route.access.who === who).map(nameOf);
+    expect(by('signedLink')).toEqual(SIGNED_LINK);
     expect(by('public').sort()).toEqual([...PUBLIC].sort());
     expect(by('signedIn').sort()).toEqual([...SIGNED_IN].sort());
     expect(new Set(routes.map(nameOf)).size).toBe(routes.length);
@@ -233,7 +241,8 @@ describe.each(ROLES)('for %s', (role) => {
       const ownRule = route.path === '/mails/:mailId' && role !== 'admin' && role !== 'anonymous';
       const expected = ownRule ? 'hidden' : expectedFor(route, role);
       expect(outcomeOf(answer), JSON.stringify(answer)).toBe(expected);
-      if (expected === 'passes' && route.method !== 'get') expect(answer.code).toBe('csrf');
+      const needsToken = route.method !== 'get' && route.access.who !== 'signedLink';
+      if (expected === 'passes' && needsToken) expect(answer.code).toBe('csrf');
       // A right token does not help whoever may not.
       if (expected !== 'passes') expect(await call(route, role)).toEqual(answer);
     },

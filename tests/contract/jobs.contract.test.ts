@@ -43,6 +43,7 @@ describe.each(adapters)('background work in %s', (_name, create) => {
     'make-calculation-sheet': nothing,
     'make-rendition': nothing,
     'remind-reviewers': nothing,
+    'send-digest': nothing,
   });
   const rowId = () => crypto.randomUUID();
   const until = async (isTrue: () => boolean) => {
@@ -159,6 +160,7 @@ describe.each(adapters)('background work in %s', (_name, create) => {
       'make-calculation-sheet': note('sheet'),
       'make-rendition': note('rendition'),
       'remind-reviewers': note('reminder'),
+      'send-digest': note('digest'),
     });
     await jobs.enqueue(db.manager, 'render-drawing', rowId());
     await until(() => ran.length > 0);
@@ -214,6 +216,7 @@ describe('the queue in PostgreSQL', () => {
       'make-calculation-sheet': async () => {},
       'make-rendition': async () => {},
       'remind-reviewers': async () => {},
+      'send-digest': async () => {},
       'send-mail': async (id) => {
         ran.push(id);
       },

@@ -11,8 +11,9 @@ import { queueMail } from '#server/services/mail-service.ts';
 import { inTransaction } from '#server/services/service-deps.ts';
 import type { LiveEvent } from '#shared/contract/live.ts';
 import { cloneDatabase, type TestDatabase } from '#tests/support/test-database.ts';
+import { testLetter } from '#tests/support/test-letter.ts';
 
-const LETTER = { subject: 'For checking', text: 'Please check revision A.', html: '<p>Please check.</p>' };
+const LETTER = testLetter();
 const storageDir = mkdtempSync(path.join(os.tmpdir(), 'tracehead-storage-'));
 const running: Product[] = [];
 let database: TestDatabase;

@@ -1,7 +1,7 @@
-import { setTimeout as delay } from 'node:timers/promises';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { CommandResult } from '#shared/contract/nets.ts';
 import { Caller } from '#tests/support/caller.ts';
+import { someoneWaits, until, whileHeld } from '#tests/support/held-steps.ts';
 import { addNet, batchesOf, lineOf, type NetPlaceFixture, openNet, put } from '#tests/support/net-fixture.ts';
 import { type RealServer, startRealServer } from '#tests/support/real-server.ts';
 import { addPerson } from '#tests/support/test-people.ts';
@@ -44,30 +44,8 @@ async function linesKept(): Promise<string[]> {
 const idsOf = (of: Batch[]) => of.flatMap(({ ops }) => ops.map(({ entityId }) => entityId)).sort();
 
 /** Holds the section, so that a batch sent meanwhile stands in the middle of its transaction. */
-async function whileHeld(work: (letGo: () => Promise<void>) => Promise<void>): Promise<void> {
-  const holder = server.db.createQueryRunner();
-  await holder.startTransaction();
-  await holder.query('SELECT id FROM section WHERE id = $1 FOR UPDATE', [place.sectionId]);
-  try {
-    await work(() => holder.rollbackTransaction());
-  } finally {
-    if (holder.isTransactionActive) await holder.rollbackTransaction();
-    await holder.release();
-  }
-}
-async function until(isTrue: () => Promise<boolean>): Promise<void> {
-  const deadline = Date.now() + 20_000;
-  while (!(await isTrue())) {
-    if (Date.now() > deadline) throw new Error('It did not happen within 20 s.');
-    await delay(20);
-  }
-}
-const someoneWaits = async () => {
-  const [{ count }] = await server.db.query(
-    "SELECT count(*)::int FROM pg_stat_activity WHERE datname = current_database() AND wait_event_type = 'Lock'",
-  );
-  return count > 0;
-};
+const whileSectionHeld = (work: (letGo: () => Promise<void>) => Promise<void>) =>
+  whileHeld(server.db, `SELECT id FROM section WHERE id = '${place.sectionId}' FOR UPDATE`, work);
 
 describe('a server that is killed in the middle of a batch', () => {
   const next = batchesOf();
@@ -80,17 +58,17 @@ describe('a server that is killed in the middle of a batch', () => {
   beforeAll(async () => {
     before = await changeNumber();
     for (const batch of acknowledged) await sent(batch);
-    await whileHeld(async (letGo) => {
+    await whileSectionHeld(async (letGo) => {
       const sending = send(unanswered);
       sending.then(nothing, nothing);
-      await until(someoneWaits);
+      await until(() => someoneWaits(server.db));
       sending.abort();
       await letGo();
     });
     await until(async () => (await linesKept()).length === 12);
-    await whileHeld(async () => {
+    await whileSectionHeld(async () => {
       const sending = send(underWay).then(nothing, nothing);
-      await until(someoneWaits);
+      await until(() => someoneWaits(server.db));
       await server.kill();
       await sending;
     });

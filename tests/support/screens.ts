@@ -65,6 +65,7 @@ export const PUBLIC_SCREENS: readonly Screen[] = [
   { name: 'forgotten password', path: '/forgot-password', open: heading(/./) },
   { name: 'new password', path: '/reset-password?token=none', open: heading(/./) },
   { name: 'invitation', path: '/invitation?token=none', open: heading(/./) },
+  { name: 'stop the digest', path: '/stop-digest?token=none', open: heading(/./) },
 ];
 
 export const SCREENS_OF: ReadonlyArray<{ readonly person: string; readonly screens: readonly Screen[] }> = [
@@ -209,3 +210,4 @@ export async function signInToDemo(page: Page, email: string): Promise<void> {
   await page.getByRole('button', { name: 'Sign in', exact: true }).click();
   await page.getByRole('heading', { name: 'Your dams' }).waitFor();
 }
+      { name: 'mail templates', path: '/mails/templates', open: heading('Mail templates') },

@@ -40,6 +40,8 @@ export interface SentForCheckingData extends RevisionFacts {
 
 export function sentForCheckingMail(data: SentForCheckingData): Letter {
   return layOut({
+    kind: 'sentForChecking',
+    hasPicture: true,
     subject: `For checking: ${title(data)}`,
     paragraphs: [
       `${data.sentBy} asks you to check a flow net.`,
@@ -53,8 +55,10 @@ export function sentForCheckingMail(data: SentForCheckingData): Letter {
     ],
     figures: data.figures,
     link: { label: 'Open the revision', url: data.url },
-    closing:
-      'A flow net is a two-dimensional estimate of steady seepage. The figures above are those frozen with the revision.',
+    closing: [
+      'A flow net is a two-dimensional estimate of steady seepage.',
+      ...(data.figures ? ['The figures above are those frozen with the revision.'] : []),
+    ].join(' '),
   });
 }
 
@@ -93,6 +97,7 @@ const DECIDED: Record<DecidedData['decision'], { subject: string; did: string; c
 export function decidedMail(data: DecidedData): Letter {
   const { subject, did, closing } = DECIDED[data.decision];
   return layOut({
+    kind: data.decision,
     subject: `${subject}: ${title(data)}`,
     paragraphs: [`${data.decidedBy} ${did}`, ...(data.note ? [`Note: ${data.note}`] : [])],
     facts: [...factsOf(data), ['Signed', `${data.decidedBy}, ${data.capacity}`]],
@@ -109,6 +114,7 @@ export interface SendingWithdrawnData extends RevisionFacts {
 
 export function sendingWithdrawnMail(data: SendingWithdrawnData): Letter {
   return layOut({
+    kind: 'sendingWithdrawn',
     subject: `Withdrawn from checking: ${title(data)}`,
     paragraphs: [
       `${data.withdrawnBy} has withdrawn the flow net from checking. Nothing more is asked of you.`,
@@ -131,6 +137,7 @@ export interface ReviewReminderData extends RevisionFacts {
 export function reviewReminderMail(data: ReviewReminderData): Letter {
   const overdue = data.kind === 'overdue';
   return layOut({
+    kind: overdue ? 'overdue' : 'dueTomorrow',
     subject: `${overdue ? 'Overdue for checking' : 'Due tomorrow for checking'}: ${title(data)}`,
     paragraphs: [
       overdue

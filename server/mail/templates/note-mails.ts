@@ -15,6 +15,7 @@ export interface NamedInNoteData {
 export function namedInNoteMail(data: NamedInNoteData): Letter {
   const { author, damName, drawing, section, netName, noteNumber, text, url } = data;
   return layOut({
+    kind: 'namedInNote',
     subject: `Note ${noteNumber} names you: ${damName}, ${drawing}, ${section}`,
     paragraphs: [`${author} names you in a note.`, text],
     facts: [

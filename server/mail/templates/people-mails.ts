@@ -15,6 +15,7 @@ export function invitationMail({ invitedBy, damName, parts, url, daysValid }: In
     ? `${invitedBy} invites you to work on ${damName} in Tracehead, as ${parts}.`
     : `${invitedBy} invites you to Tracehead.`;
   return layOut({
+    kind: 'invitation',
     subject: damName ? `Invitation to ${damName}` : 'Invitation to Tracehead',
     paragraphs: [
       purpose,
@@ -34,6 +35,7 @@ export interface AddedToDamData {
 
 export function addedToDamMail({ addedBy, damName, parts, url }: AddedToDamData): Letter {
   return layOut({
+    kind: 'addedToDam',
     subject: `You now belong to ${damName}`,
     paragraphs: [`${addedBy} has added you to ${damName}, as ${parts}.`],
     link: { label: 'Open the dam', url },
@@ -48,6 +50,7 @@ export interface ResetData {
 
 export function passwordResetMail({ url, minutesValid }: ResetData): Letter {
   return layOut({
+    kind: 'passwordReset',
     subject: 'Choose a new password',
     paragraphs: ['Somebody, most likely you, asked for a new password for your sign-in to Tracehead.'],
     link: { label: 'Choose a new password', url },

@@ -1,5 +1,7 @@
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
+import { Part } from '#client/components/part.tsx';
+import { MailChoiceForm } from '#client/features/mails/components/mail-choice-form.tsx';
 import {
   EndAllSessions,
   NameForm,
@@ -9,6 +11,7 @@ import { LocaleForm } from '#client/features/session/components/locale-form.tsx'
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { accountMenuText } from '#client/text/account-menu.ts';
 import { localeText } from '#client/text/locale.ts';
+import { mailChoiceText } from '#client/text/mail-choice.ts';
 import { sessionText as text } from '#client/text/session.ts';
 import { AppFrame } from '../app-frame.tsx';
 
@@ -33,6 +36,13 @@ export function AccountPage() {
             <div className="p-3.5">
               <LocaleForm />
             </div>
+          </Panel>
+          <Panel title={mailChoiceText.title}>
+            <Part>
+              <div className="p-3.5">
+                <MailChoiceForm />
+              </div>
+            </Part>
           </Panel>
           <Panel title={text.password}>
             <div className="p-3.5">

@@ -1,12 +1,10 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
-import { Button } from '#client/components/button.tsx';
-import { useNotice } from '#client/components/notice.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Panel } from '#client/components/panel.tsx';
-import { ProblemNote } from '#client/components/problem-note.tsx';
-import { mailQuery, useSendAgain } from '#client/features/mails/api/mail-queries.ts';
+import { mailQuery } from '#client/features/mails/api/mail-queries.ts';
 import { MailText } from '#client/features/mails/components/mail-text.tsx';
+import { SendAgain } from '#client/features/mails/components/send-again.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { formatMoment } from '#client/lib/dates.ts';
 import { paths } from '#client/lib/paths.ts';
@@ -24,7 +22,7 @@ export function MailPage() {
         <Panel
           title={stateOf(mail)}
           look="register"
-          action={session.can.includes('mail.read') ? <SendAgain mailId={mail.id} /> : null}
+          action={session.can.includes('mail.read') ? <SendAgain mail={mail} /> : null}
         >
           <div className="p-3.5">
             <MailText text={mail.text} />
@@ -40,21 +38,6 @@ export function MailPage() {
 
 function stateOf(mail: MailDto): string {
   if (mail.state === 'failed') return text.failed(mail.lastError);
+  if (mail.state === 'held' || mail.state === 'inDigest' || mail.state === 'dropped') return text[mail.state];
   return mail.sentAt ? text.sentAt(formatMoment(mail.sentAt)) : text.waiting;
-}
-
-function SendAgain({ mailId }: { mailId: string }) {
-  const sendAgain = useSendAgain(mailId);
-  const notice = useNotice();
-  return (
-    <>
-      <ProblemNote error={sendAgain.error} />
-      <Button
-        busy={sendAgain.isPending}
-        onClick={() => sendAgain.mutate(undefined, { onSuccess: () => notice(text.sendAgainDone) })}
-      >
-        {text.sendAgain}
-      </Button>
-    </>
-  );
 }

@@ -4,7 +4,12 @@ import {
   type RevisionFacts,
   sentForCheckingMail,
 } from '#server/mail/templates/checking-mails.ts';
+import { digestMail } from '#server/mail/templates/digest-mail.ts';
+import { withPicture } from '#server/mail/templates/letter.ts';
+import { namedInNoteMail } from '#server/mail/templates/note-mails.ts';
 import { addedToDamMail, invitationMail, passwordResetMail } from '#server/mail/templates/people-mails.ts';
+import { sampleLetters } from '#server/mail/templates/sample-letters.ts';
+import { mailKind } from '#shared/contract/mails.ts';
 
 const REVISION: RevisionFacts = {
   damName: 'Harrow Fen Dam',
@@ -71,6 +76,72 @@ describe('every mail', () => {
   it.each(Object.entries(letters))('(%s) has a subject of one line', (_name, { subject }) => {
     expect(subject).toMatch(/^\S.{5,200}\S$/);
     expect(subject).not.toMatch(/[\r\n]/);
+  });
+});
+
+describe('the samples', () => {
+  const samples = sampleLetters('https://tracehead.test');
+
+  it('show every kind of mail once', () => {
+    expect(samples.map(({ kind }) => kind).sort()).toEqual([...mailKind.options].sort());
+  });
+
+  it.each(samples.map((letter) => [letter.kind, letter] as const))(
+    '(%s) stay within the width of a plain client',
+    (_kind, { text }) => {
+      const figures = text.split('\n').filter((line) => / {2}/.test(line));
+      for (const line of figures) expect(line.length, line).toBeLessThanOrEqual(76);
+    },
+  );
+});
+
+describe('a picture in a mail', () => {
+  const picture = { source: 'cid:section@tracehead.test', alt: 'Section "B–B" & net', widthPx: 600 };
+
+  it('stands in its place, named for readers who do not see it', () => {
+    const html = withPicture(letters.sent.html, picture);
+    expect(html).toContain('<img src="cid:section@tracehead.test" alt="Section &quot;B–B&quot; &amp; net"');
+    expect(html.indexOf('<img')).toBeLessThan(html.indexOf('Point'));
+  });
+
+  it('leaves no trace when there is none', () => {
+    expect(withPicture(letters.sent.html, null)).not.toMatch(/picture|<img|<!--/);
+    expect(withPicture(letters.accepted.html, picture)).not.toContain('<img');
+  });
+
+  it('is not put into what somebody typed', () => {
+    const { html } = namedInNoteMail({
+      ...REVISION,
+      author: 'A',
+      noteNumber: 1,
+      text: '<!--picture-->',
+      url: LINK,
+    });
+    expect(withPicture(html, picture)).not.toContain('<img');
+  });
+});
+
+describe('the daily digest', () => {
+  const item = (n: number) => ({
+    title: `Note ${n} names you`,
+    text: `<b>Why ${n}?</b>`,
+    url: `${LINK}${n}`,
+  });
+  const digest = digestMail({ day: '2 December 2026', items: [item(1), item(2)], stopUrl: `${LINK}#stop` });
+
+  it('says how many notices it holds, in one line', () => {
+    expect(digest.subject).toBe('Daily digest of 2 December 2026: 2 notices');
+  });
+
+  it('tells each with its link, in both parts, and fetches nothing', () => {
+    for (const n of [1, 2]) {
+      expect(digest.text).toContain(`${n}. Note ${n} names you\n<b>Why ${n}?</b>\n${LINK}${n}`);
+      expect(digest.html).toContain(
+        `<a href="${LINK}${n}">Note ${n} names you</a><br>&lt;b&gt;Why ${n}?&lt;/b&gt;`,
+      );
+    }
+    expect(digest.text).toContain(`Stop these digests:\n${LINK}#stop`);
+    expect(digest.html).not.toMatch(/<(img|script|iframe|style)|src=/i);
   });
 });
 

@@ -5,6 +5,7 @@ import { OutboxMailEntity } from '#server/entities/mail-entity.ts';
 import { createSendMailHandler } from '#server/jobs/handlers/send-mail.ts';
 import type { JobsPort } from '#server/jobs/jobs-port.ts';
 import { createPgBossJobs } from '#server/jobs/pg-boss-jobs.ts';
+import { MailRefused } from '#server/mail/mailer-port.ts';
 import { createMemoryMailer } from '#server/mail/memory-mailer.ts';
 import { createSmtpMailer } from '#server/mail/smtp-mailer.ts';
 import {
@@ -20,8 +21,9 @@ import { inTransaction } from '#server/services/service-deps.ts';
 import { createRecordingJobs, type RecordingJobs } from '#tests/support/recording-jobs.ts';
 import { type SmtpStandIn, startSmtpStandIn } from '#tests/support/smtp-stand-in.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
+import { testLetter } from '#tests/support/test-letter.ts';
 
-const LETTER = { subject: 'For checking', text: 'Please check revision A.', html: '<p>Please check.</p>' };
+const LETTER = testLetter();
 const TO = 'remi.okafor@harrow-fen.example';
 
 let app: TestApp;
@@ -44,7 +46,10 @@ const row = (id: string) => app.db.getRepository(OutboxMailEntity).findOneByOrFa
 function delivery(overrides: Partial<DeliveryDeps> = {}) {
   const mailer = createMemoryMailer();
   const jobs: RecordingJobs = createRecordingJobs();
-  return { mailer, jobs, deps: { db: app.db, jobs, mailer, clock, forgetLinks: false, ...overrides } };
+  const { config } = app.deps;
+  const pictureOf = async () => null;
+  const deps = { db: app.db, jobs, mailer, clock, config, pictureOf, forgetLinks: false, ...overrides };
+  return { mailer, jobs, deps };
 }
 
 describe('a mail', () => {
@@ -91,6 +96,18 @@ describe('a mail', () => {
     await deliverMail(deps, id);
     expect(await row(id)).toMatchObject({ state: 'failed', attempts: MAX_ATTEMPTS, lastError: 'still no' });
     expect(mailer.sent).toHaveLength(0);
+  });
+
+  it('that the mail server refuses for good is given up at once, with its reason, to be sent again', async () => {
+    const { deps, mailer, jobs } = delivery();
+    const id = await write();
+    mailer.failNext(new MailRefused('550 no such mailbox'));
+    await deliverMail(deps, id);
+    expect(await row(id)).toMatchObject({ state: 'failed', attempts: 1, lastError: '550 no such mailbox' });
+    expect(jobs.queued).toEqual([]);
+    await inTransaction(app.deps, (tx) => sendAgain(tx, id));
+    await deliverMail(deps, id);
+    expect(await row(id)).toMatchObject({ state: 'sent', attempts: 1, lastError: '' });
   });
 
   it('that was given up goes again when asked, under its own Message-ID; a sent one goes as a new mail', async () => {
@@ -160,13 +177,14 @@ describe('the worker and a real mail server', () => {
     now = new Date();
     jobs = createPgBossJobs({ url: app.database.appUrl, logger });
     const mailer = createSmtpMailer({ smtpUrl, from: 'Tracehead <tracehead@harrow-fen.example>' });
-    const deps = { db: app.db, jobs, mailer, clock: { now: () => new Date() }, forgetLinks: false };
+    const deps = { ...app.deps, jobs, mailer, clock: { now: () => new Date() }, forgetLinks: false };
     await jobs.start({
       'render-drawing': async () => {},
       'send-mail': createSendMailHandler(deps),
       'make-calculation-sheet': async () => {},
       'make-rendition': async () => {},
       'remind-reviewers': async () => {},
+      'send-digest': async () => {},
     });
   }
   const writeReal = () =>

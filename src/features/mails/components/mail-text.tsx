@@ -2,7 +2,7 @@ import { createElement } from 'react';
 
 const ADDRESS = /(https?:\/\/[^\s<>"]+)/;
 
-const OWN_PAGE = /^\/(dams|drawings|nets|revisions|invitation|reset-password)\b/;
+const OWN_PAGE = /^\/(dams|drawings|nets|revisions|invitation|reset-password|stop-digest)\b/;
 
 /** A link of this site is taken as a path, so that it opens here whatever PUBLIC_URL says of host and port. */
 function hrefOf(address: string): string {
