@@ -141,7 +141,6 @@ async function furnish(netId: string, sheetId: string): Promise<Record<string, s
     reasons: await reasonsFor(callers.engineer, netId),
   };
   await callers.engineer.post(`/nets/${netId}/revisions`, sending).expect(201);
-  const letter = { subject: 'Letter', text: 'text', html: '<p>text</p>' };
   const mailId = await inTransaction(app.deps, (tx) =>
     queueMail(tx, { personId: null, to: 'a@harrow-fen.example', ...testLetter() }),
   );
