@@ -57,7 +57,7 @@ export async function presentRegister(
   const rows: EntryRow[] = await manager.query(ENTRIES, [ids]);
   const notes = await noteCounts(manager, ids, actor);
   const netIds = rows.filter(({ kind }) => kind === 'net').map(({ id }) => id);
-  const found = await foundNotes(manager, netIds, search);
+  const found = await foundNotes(manager, netIds, search, actor.id);
   return rows.map((row) => ({
     ...toRow(row),
     openNotes: notes.get(row.id)?.open ?? 0,

@@ -12,6 +12,7 @@ import type { PointReading } from '#shared/contract/reading.ts';
 import type { RegisterPage } from '#shared/contract/register.ts';
 import { downloadArchive, expectSameRows } from '#tests/support/archived-rows.ts';
 import type { Caller } from '#tests/support/caller.ts';
+import { readyToDecide } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 
 let app: TestApp;
@@ -71,7 +72,9 @@ describe('the demo', () => {
     const caller = await signedIn(reviewer.email);
     const { body: revisions } = await caller.get(`/nets/${apron}/revisions`).expect(200);
     expect(revisions.items).toHaveLength(1);
-    const { body: revision } = await caller.get(`/revisions/${revisions.items[0].id}`).expect(200);
+    const revisionId = revisions.items[0].id;
+    await readyToDecide(caller, revisionId);
+    const { body: revision } = await caller.get(`/revisions/${revisionId}`).expect(200);
     expect(revision.decideRefusal).toBeNull();
     const mails = await app.db.query('SELECT to_address FROM outbox_mail');
     expect(mails).toEqual([{ to_address: reviewer.email }]);

@@ -18,6 +18,7 @@ import {
   readyToSend,
   SIGNATURE,
   sendInputFor,
+  sentUnopened,
 } from '#tests/support/revision-fixture.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 import { addDam, addMember } from '#tests/support/test-people.ts';
@@ -299,6 +300,15 @@ describe('a search', () => {
     expect(await search('übersee')).toEqual([]);
     expect(await search('octob')).toEqual([place.netId]);
     await expectKeptUp();
+  });
+
+  it('shows no note of a net to the reviewer who may still read it blind', async () => {
+    const { caller, netId, reviewer, revisionId } = await sentUnopened(app);
+    await writeNote(caller, netId, 'The pressure at P1 is 42 kPa.');
+    const found = async () => (await rowOf(reviewer.caller, netId, { q: 'pressure' })).found;
+    expect(await found()).toBeNull();
+    await readyToDecide(reviewer.caller, revisionId);
+    expect((await found())?.parts.map(({ text }) => text).join('')).toBe('The pressure at P1 is 42 kPa.');
   });
 
   it('takes signs of a query language for what they are', async () => {
