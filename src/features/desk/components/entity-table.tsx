@@ -1,5 +1,4 @@
 import type { ReactNode } from 'react';
-import { useStore } from 'zustand';
 import { Button } from '#client/components/button.tsx';
 import { Actions, Dialog } from '#client/components/dialog.tsx';
 import { entityTableText as text } from '#client/text/entity-table.ts';
@@ -9,10 +8,11 @@ import { lineRows, placeToShow } from '../model/entity-rows.ts';
 import { AddKnownPoint, AddLine, AddReadingPoint } from './entity-table-add.tsx';
 import { LineTable } from './entity-table-lines.tsx';
 import { KnownPointTable, ReadingPointTable } from './entity-table-points.tsx';
+import { useDeskState } from './use-desk-state.ts';
 
 /** Every line and point of the net in tables, to be read, edited, added and removed without the sheet. */
 export default function EntityTable({ store, onClose }: { store: DeskStore; onClose: () => void }) {
-  const state = useStore(store);
+  const state = useDeskState(store, 'document', 'reading', 'readOnly', 'hiddenKinds', 'lockedKinds');
   const { document, reading, readOnly } = state;
   const lines = lineRows(state);
   const known = entitiesOf(document, 'knownPoint');

@@ -1,5 +1,4 @@
 import type { ReactNode } from 'react';
-import { useStore } from 'zustand';
 import { fixedText } from '#client/lib/figures.ts';
 import { exitsText as text } from '#client/text/exits.ts';
 import { scheduleText } from '#client/text/schedule.ts';
@@ -10,10 +9,18 @@ import { HeaveTable } from './heave-table.tsx';
 import { PublishedValues } from './published-values.tsx';
 import { ScheduleState } from './schedule-pane.tsx';
 import { SeepageTable } from './seepage-table.tsx';
+import { useDeskState } from './use-desk-state.ts';
 
 /** Where the water leaves and what it does there: exit gradients, heave, creep, and the seepage to each outlet. */
 export function ExitsPane({ store, views }: { store: DeskStore; views: ReactNode }) {
-  const { document, reading, documentRevision, readingOf, readingFailed } = useStore(store);
+  const { document, reading, documentRevision, readingOf, readingFailed } = useDeskState(
+    store,
+    'document',
+    'reading',
+    'documentRevision',
+    'readingOf',
+    'readingFailed',
+  );
   const stale = readingOf !== documentRevision;
   return (
     <section aria-label={text.title} aria-busy={stale} className="relative h-full overflow-auto bg-film">

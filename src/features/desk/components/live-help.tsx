@@ -1,17 +1,18 @@
-import { type CSSProperties, useEffect, useMemo, useState } from 'react';
-import { useStore } from 'zustand';
+import { type CSSProperties, useEffect, useRef, useState } from 'react';
 import { deskViewText } from '#client/text/desk-view.ts';
 import { liveHelpText as text } from '#client/text/tracing-aids.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
-import { readSetOut, type SetOut } from '#shared/compute/set-out.ts';
+import type { SetOut } from '#shared/compute/set-out.ts';
 import type { FlowNetDocument } from '#shared/contract/document.ts';
-import type { DeskStore } from '../model/desk-state.ts';
+import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import type { HelpShown, LiveHelpSource } from '../model/live-help-source.ts';
 import type { ViewStore } from '../model/view-store.ts';
-import { sheetZoom, toScreen } from '../model/viewport.ts';
+import { sheetZoom, toScreen, type Viewport } from '../model/viewport.ts';
+import { onceAFrame } from '../render/once-a-frame.ts';
 import { headWords, helpWords } from './live-help-words.ts';
-import { wordsAt } from './pointer-readout.tsx';
+import { setOutOf, wordsAt } from './pointer-readout.tsx';
 import { thingWords } from './thing-words.ts';
+import { type RowOf, writeRows } from './written-rows.ts';
 
 type LiveHelpProps = {
   store: DeskStore;
@@ -22,11 +23,11 @@ type LiveHelpProps = {
 };
 
 /** Figures beside the pointer while a line is drawn or a vertex dragged, and their words for whoever asks to hear them. */
-export function LiveHelp({ store, views, source, touched }: LiveHelpProps) {
-  const shown = useStore(source.state, (state) => state.shown);
+export function LiveHelp(props: LiveHelpProps) {
+  const { store, views, source } = props;
   return (
     <>
-      {shown === null ? null : <Beside store={store} views={views} shown={shown} touched={touched} />}
+      <Beside {...props} />
       <Told store={store} views={views} source={source} />
     </>
   );
@@ -37,51 +38,73 @@ const AWAY_PX = 18;
 const CHARACTER_PX = 6.6;
 const LINE_PX = 18;
 /** Under the readout of the place, which a narrow sheet shows in its second row; a finger is seldom there. */
-const CORNER = { left: '12px', top: '96px' };
+const IN_CORNER = 'translate(12px, 96px)';
 /** Words over the scan are read by a halo of the paper's colour, as the marks on it are. */
 const HALO: CSSProperties = {
   textShadow: Array.from({ length: 5 }, () => '0 0 2px var(--color-film)').join(', '),
 };
 
-function Beside({ store, views, shown, touched }: Omit<LiveHelpProps, 'source'> & { shown: HelpShown }) {
-  const document = useStore(store, (state) => state.document);
-  const reading = useStore(store, (state) => state.reading);
-  const documentRevision = useStore(store, (state) => state.documentRevision);
-  const view = useStore(views, (state) => state.view);
-  const setOut = useMemo(() => readSetOut(document), [document]);
-  // In the corner they stand right under the readout, which tells the place already.
-  const words = helpWords(shown, touched ? [] : wordsOfPlace(shown.at, document, setOut), {
-    document,
-    reading,
-    documentRevision,
-  });
-  if (words.length === 0) return null;
-  const [x, y] = toScreen(view, shown.at);
-  const height = words.length * LINE_PX;
-  const width = CHARACTER_PX * Math.max(...words.map((line) => line.length));
-  // Beside the pointer where there is room: to its right and below, else to the other side.
-  const flipped = x + AWAY_PX + width > view.widthPx && x - AWAY_PX - width > 0;
-  const left = flipped ? `calc(${Math.round(x - AWAY_PX)}px - 100%)` : `${Math.round(x + AWAY_PX)}px`;
-  const top = y + AWAY_PX + height > view.heightPx ? y - AWAY_PX - height : y + AWAY_PX;
-  const place = touched ? CORNER : { left, top: `${Math.round(Math.max(4, top))}px` };
+const ROW: RowOf = { tag: 'p', className: 'm-0 leading-[18px]' };
+
+function Beside({ store, views, source, touched }: LiveHelpProps) {
+  const element = useRef<HTMLDivElement>(null);
+  useEffect(
+    () =>
+      element.current === null ? undefined : keepBeside(element.current, { store, views, source, touched }),
+    [store, views, source, touched],
+  );
   return (
     // Said aloud at every movement it would drown everything else; Q tells it.
     <div
+      ref={element}
+      hidden
       aria-hidden="true"
       data-live-help
-      className="pointer-events-none absolute top-0 left-0 whitespace-nowrap bg-film/80 text-sm font-semibold"
-      style={{
-        ...HALO,
-        transform: `translate(${place.left}, ${place.top})`,
-      }}
-    >
-      {words.map((line) => (
-        <p key={line} className="m-0 leading-[18px]">
-          {line}
-        </p>
-      ))}
-    </div>
+      className="pointer-events-none absolute top-0 left-0 whitespace-nowrap bg-film/80 text-sm font-semibold will-change-transform"
+      style={HALO}
+    />
   );
+}
+
+/** Keeps what is told beside the pointer written in an element, and the element beside the pointer, until it is ended. */
+function keepBeside(element: HTMLElement, { store, views, source, touched }: LiveHelpProps): () => void {
+  const frame = onceAFrame(() => {
+    const { shown } = source.state.getState();
+    const words = shown === null ? [] : besideWords(store.getState(), shown, touched);
+    element.hidden = words.length === 0;
+    if (shown === null || words.length === 0) return;
+    writeRows(element, ROW, words);
+    element.style.transform = touched ? IN_CORNER : besidePlace(views.getState().view, shown.at, words);
+  });
+  const endings = [
+    source.state.subscribe(frame.due),
+    views.subscribe(frame.due),
+    store.subscribe(({ document, reading }, before) => {
+      if (document !== before.document || reading !== before.reading) frame.due();
+    }),
+    frame.end,
+  ];
+  frame.due();
+  return () => {
+    for (const end of endings) end();
+  };
+}
+
+function besideWords(state: DeskState, shown: HelpShown, touched: boolean): string[] {
+  // In the corner they stand right under the readout, which tells the place already.
+  const place = touched ? [] : wordsOfPlace(shown.at, state.document, setOutOf(state.document));
+  return helpWords(shown, place, state);
+}
+
+/** Beside the pointer where there is room: to its right and below, else to the other side. */
+function besidePlace(view: Viewport, at: SheetPx, words: readonly string[]): string {
+  const [x, y] = toScreen(view, at);
+  const height = words.length * LINE_PX;
+  const width = CHARACTER_PX * Math.max(...words.map((line) => line.length));
+  const flipped = x + AWAY_PX + width > view.widthPx && x - AWAY_PX - width > 0;
+  const left = flipped ? `calc(${Math.round(x - AWAY_PX)}px - 100%)` : `${Math.round(x + AWAY_PX)}px`;
+  const top = y + AWAY_PX + height > view.heightPx ? y - AWAY_PX - height : y + AWAY_PX;
+  return `translate(${left}, ${Math.round(Math.max(4, top))}px)`;
 }
 
 /** Tells, when it is asked, what stands at the pointer. */
@@ -106,7 +129,7 @@ async function wordsNow(store: DeskStore, source: LiveHelpSource, zoom: number):
   const { pointerAt, document } = store.getState();
   const at = shown?.at ?? (pointerAt === null ? null : sheetPx(...pointerAt));
   if (at === null) return text.nothing;
-  const setOut = readSetOut(document);
+  const setOut = setOutOf(document);
   const thing = thingWords(store.getState(), setOut.map, at, REACH_PX / zoom);
   const place = [...(thing === null ? [] : [thing]), ...wordsOfPlace(at, document, setOut)];
   const read = await store.headAt([at[0], at[1]]);

@@ -4,9 +4,10 @@ import { deskViewText as text } from '#client/text/desk-view.ts';
 import { placingText } from '#client/text/set-out.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import type { FollowedPlace } from '../model/followed-place.ts';
 import type { SheetRaster } from '../model/sheet-raster.ts';
 import { centredOn, type Viewport } from '../model/viewport.ts';
-import { paintMagnified } from '../render/magnified.ts';
+import { keepMagnified } from '../render/keep-magnified.ts';
 import type { SheetRenderer } from '../render/sheet-renderer.ts';
 import { finePlaceOf } from '../tools/fine-place.ts';
 import { useFinePlacing } from './use-fine-placing.ts';
@@ -24,36 +25,48 @@ function viewAround({ fromBase }: SheetRaster, at: SheetPx): Viewport {
 type MagnifierProps = {
   store: DeskStore;
   renderer: SheetRenderer;
-  /** Where the pointer is placing something just now; null when it is not. */
-  follow: SheetPx | null;
+  /** Where the pointer is placing something just now. */
+  followed: FollowedPlace;
 };
 
 /**
  * The sheet at eight times its size: around the pointer while it places something, else around the chosen point or
  * vertex, which can then be placed to a tenth of a pixel by dragging in here or by arrow keys.
  */
-export function Magnifier({ store, renderer, follow }: MagnifierProps) {
+export function Magnifier({ store, renderer, followed }: MagnifierProps) {
   const document = useStore(store, (state) => state.document);
-  const preview = useStore(store, (state) => state.preview);
   const selection = useStore(store, (state) => state.selection);
   const readOnly = useStore(store, (state) => state.readOnly);
+  const follows = useStore(followed, ({ at }) => at !== null);
   const canvas = useRef<HTMLCanvasElement>(null);
+  const words = useRef<HTMLSpanElement>(null);
   const chosen = readOnly ? null : (finePlaceOf(document, selection)?.at ?? null);
   const placing = useFinePlacing(store, chosen, (at) => viewAround(renderer.raster, at));
-  const centre = placing.centre ?? follow ?? chosen;
+  const held = placing.centre;
+  const isShown = held !== null || follows || chosen !== null;
 
   useEffect(() => {
     const element = canvas.current;
-    if (element === null || centre === null) return;
-    const view = viewAround(renderer.raster, centre);
-    const paint = () => paintMagnified(element, renderer, view, { document, preview });
-    const extra = renderer.addView('magnifier', paint);
-    extra.want(view);
-    paint();
-    return extra.end;
-  }, [centre, document, preview, renderer]);
+    if (element === null || !isShown) return;
+    // Painted apart from React: a render of its own for each movement of the pointer takes longer than the painting.
+    const magnified = keepMagnified({
+      canvas: element,
+      renderer,
+      store,
+      centre: () => held ?? followed.getState().at ?? chosen,
+      viewAround: (at) => viewAround(renderer.raster, at),
+      onPainted(at) {
+        if (words.current !== null) words.current.textContent = placingText.place(at[0], at[1]);
+      },
+    });
+    const endFollowing = followed.subscribe(magnified.moved);
+    return () => {
+      endFollowing();
+      magnified.end();
+    };
+  }, [isShown, held, chosen, followed, renderer, store]);
 
-  if (centre === null) return null;
+  if (!isShown) return null;
   const canPlace = chosen !== null;
   return (
     <fieldset
@@ -74,11 +87,10 @@ export function Magnifier({ store, renderer, follow }: MagnifierProps) {
         {text.magnified}
       </span>
       <span
+        ref={words}
         data-place
         className="pointer-events-none absolute top-0.5 left-1 bg-film px-1 text-xs text-ink-2 tabular-nums"
-      >
-        {placingText.place(centre[0], centre[1])}
-      </span>
+      />
     </fieldset>
   );
 }

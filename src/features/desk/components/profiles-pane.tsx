@@ -21,6 +21,7 @@ import { ProfileTable } from './profile-table.tsx';
 import { ScheduleState, SmallButton } from './schedule-pane.tsx';
 import { tableTsv } from './schedule-text.ts';
 import { UpliftTable } from './uplift-table.tsx';
+import { useDeskState } from './use-desk-state.ts';
 
 interface ProfilesPaneProps {
   store: DeskStore;
@@ -32,7 +33,15 @@ interface ProfilesPaneProps {
 
 /** The profiles of the net, one shown at a time: what it is, the uplift of a base, and its table. */
 export function ProfilesPane({ store, views, netName, onForm, onSheet }: ProfilesPaneProps) {
-  const { document, reading, documentRevision, readingOf, readingFailed, readOnly } = useStore(store);
+  const { document, reading, documentRevision, readingOf, readingFailed, readOnly } = useDeskState(
+    store,
+    'document',
+    'reading',
+    'documentRevision',
+    'readingOf',
+    'readingFailed',
+    'readOnly',
+  );
   const { profiles, shown, choose } = useShownProfile(store);
   const stale = readingOf !== documentRevision;
   const read = reading?.profiles.find(({ id }) => id === shown?.id);

@@ -22,6 +22,7 @@ import {
 } from './schedule-rows.ts';
 import { scheduleTsv } from './schedule-text.ts';
 import { keptColumns, PointFinder, ScheduleColumnsChoice } from './schedule-view.tsx';
+import { useDeskState } from './use-desk-state.ts';
 
 /** From so many points on one looks for a point by its name. */
 const LONG = 8;
@@ -47,8 +48,16 @@ export function SchedulePane({
   className = '',
   views,
 }: SchedulePaneProps) {
-  const { document, reading, documentRevision, pointsOf, readingFailed, readOnly, selection } =
-    useStore(store);
+  const { document, reading, documentRevision, pointsOf, readingFailed, readOnly, selection } = useDeskState(
+    store,
+    'document',
+    'reading',
+    'documentRevision',
+    'pointsOf',
+    'readingFailed',
+    'readOnly',
+    'selection',
+  );
   const [sort, setSort] = useState<Sort>(ENTERED_ORDER);
   const [typed, setTyped] = useState('');
   const [columns] = useState(keptColumns);

@@ -6,6 +6,7 @@ import type { CrosshairStore } from '../model/crosshair.ts';
 import { createCrossingClient } from '../model/crossing-client.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import { drawingWayChoice } from '../model/drawing-way.ts';
+import type { FollowedPlace } from '../model/followed-place.ts';
 import { createInkClient } from '../model/ink-client.ts';
 import type { LiveHelpSource } from '../model/live-help-source.ts';
 import { asksForLine, pressSets } from '../model/press-meaning.ts';
@@ -47,8 +48,8 @@ export type SheetControllerOptions = {
   /** What is told beside the pointer; follows it from here. */
   readonly help: LiveHelpSource;
   readonly crosshair: CrosshairStore;
-  /** Place being set with the magnified view, or null. */
-  onFollow(at: SheetPx | null): void;
+  /** Is told the place being set with the magnified view. */
+  readonly followed: FollowedPlace;
   onPanning(panning: boolean): void;
   /** Where a finger holds something to be placed, or null: the magnified view then stands clear of it. */
   onFinger(at: ScreenPx | null): void;
@@ -146,12 +147,13 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     const pointsByKeys = options.crosshair.getState().at !== null;
     const magnified = (overlay.magnify || fingerHolds || pointsByKeys) && pointer !== null;
     options.help.follow(pointer?.at ?? null, overlay, sheetZoom(view()));
-    options.onFollow(magnified ? (overlay.drawnCrossing ?? overlay.snap?.at ?? pointer!.at) : null);
+    const at = magnified ? (overlay.drawnCrossing ?? overlay.snap?.at ?? pointer!.at) : null;
+    if (at !== options.followed.getState().at) options.followed.setState({ at });
   }
 
   /** A label that finds no room on the sheet is shown while its line is pointed at. */
   function crowdedAtPointer(): readonly SceneItem[] {
-    if (crowded.size === 0 || pointer === null) return [];
+    if (crowded.size === 0 || pointer === null || isDragging(store.getState())) return [];
     const lineId = host.lineAt(pointer.at, { ...pointer.view, zoom: sheetZoom(view()) });
     const label = lineId === null ? undefined : crowded.get(`${LABEL_PREFIX}${lineId}`);
     return label === undefined ? [] : [label];
@@ -165,7 +167,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   function followPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void {
     pointer = at === null ? null : { at, keys, view };
     store.setPointer(at === null ? null : [at[0], at[1]]);
-    showOverlay();
+    // A scene that is due brings it along.
+    if (!sceneDue) showOverlay();
   }
 
   function holdByFinger(at: ScreenPx | null): void {

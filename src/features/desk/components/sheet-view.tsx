@@ -6,6 +6,7 @@ import type { ScreenPx, SheetPx } from '#shared/compute/frames.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
 import { createCrosshair } from '../model/crosshair.ts';
 import type { DeskStore } from '../model/desk-state.ts';
+import { createFollowedPlace, type FollowedPlace } from '../model/followed-place.ts';
 import { createLiveHelp } from '../model/live-help-source.ts';
 import { rasterOf, type SheetRaster } from '../model/sheet-raster.ts';
 import type { ToolId } from '../model/tool-choice.ts';
@@ -80,7 +81,7 @@ export function SheetView({
   const [crosshair] = useState(createCrosshair);
   const help = useMemo(() => createLiveHelp(store), [store]);
   const [controller, setController] = useState<SheetController | null>(null);
-  const [follow, setFollow] = useState<SheetPx | null>(null);
+  const [followed] = useState(createFollowedPlace);
   const [panning, setPanning] = useState(false);
   const [finger, setFinger] = useState<ScreenPx | null>(null);
   const tool = useStore(store, (state) => state.tool);
@@ -99,7 +100,7 @@ export function SheetView({
       notes: () => shownNotes.current,
       help,
       crosshair,
-      onFollow: setFollow,
+      followed,
       onPanning: setPanning,
       onFinger: setFinger,
     });
@@ -108,7 +109,7 @@ export function SheetView({
       setController(null);
       made.destroy();
     };
-  }, [opened, shown, store, views, help, crosshair]);
+  }, [opened, shown, store, views, help, crosshair, followed]);
 
   useEffect(() => {
     // A cleaned-up picture is made when its sheet is ready.
@@ -183,17 +184,17 @@ export function SheetView({
           <EditPrompt store={store} />
           <DraftActions store={store} onAction={(action) => controller?.act(action)} />
         </div>
-        <div className={isUnderMagnifier(follow, views.getState().view) ? 'order-first' : 'ml-auto'}>
+        <MagnifierCorner followed={followed} views={views}>
           {controller && finger === null && (
-            <Magnifier store={store} renderer={controller.renderer} follow={follow} />
+            <Magnifier store={store} renderer={controller.renderer} followed={followed} />
           )}
-        </div>
+        </MagnifierCorner>
       </div>
       <KeyListDialog store={store} />
       <EntityTableDialog store={store} />
       {controller && finger !== null && (
         <div className="absolute" style={aboveFinger(finger, MAGNIFIER_SIDE_PX, views.getState().view)}>
-          <Magnifier store={store} renderer={controller.renderer} follow={follow} />
+          <Magnifier store={store} renderer={controller.renderer} followed={followed} />
         </div>
       )}
     </div>
@@ -207,7 +208,14 @@ function newest(raster: SheetRaster, { tiles }: SheetDto): SheetRaster {
 
 const MAGNIFIER_CORNER_PX = 230;
 
-/** True when the pointer is about to go under the magnified view, which then moves to the other side. */
+type MagnifierCornerProps = { followed: FollowedPlace; views: ViewStore; children: ReactNode };
+
+/** The magnified view stands on the right; when the pointer is about to go under it, on the other side. */
+function MagnifierCorner({ followed, views, children }: MagnifierCornerProps) {
+  const isUnder = useStore(followed, ({ at }) => isUnderMagnifier(at, views.getState().view));
+  return <div className={isUnder ? 'order-first' : 'ml-auto'}>{children}</div>;
+}
+
 function isUnderMagnifier(at: SheetPx | null, view: Viewport): boolean {
   if (at === null) return false;
   const [x, y] = toScreen(view, at);

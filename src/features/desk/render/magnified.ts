@@ -1,8 +1,10 @@
 import { sheetPx } from '#shared/compute/frames.ts';
 import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
-import { seenFrame, toScreen, type Viewport } from '../model/viewport.ts';
+import { type SheetFrame, seenFrame, toScreen, type Viewport } from '../model/viewport.ts';
 import { piecesIn } from './clip-line.ts';
+import { frameOfLine } from './line-frame.ts';
 import { COLOURS, lookOf } from './line-look.ts';
+import { framesMeet } from './seen-by.ts';
 import type { SheetRenderer } from './sheet-renderer.ts';
 
 const CROSS_GAP_PX = 4;
@@ -21,17 +23,24 @@ export function paintMagnified(
   if (context === null) return;
   renderer.paintInto(context, view);
   context.setTransform(ratio, 0, 0, ratio, 0, 0);
+  const seen = seenFrame(view);
   for (const { id, value } of Object.values(shown.document.entities)) {
-    paintEntity(context, view, shown.preview[id] ?? value);
+    paintEntity(context, view, seen, shown.preview[id] ?? value);
   }
   paintCross(context, view);
 }
 
-function paintEntity(context: CanvasRenderingContext2D, view: Viewport, value: DocumentEntity): void {
+function paintEntity(
+  context: CanvasRenderingContext2D,
+  view: Viewport,
+  seen: SheetFrame,
+  value: DocumentEntity,
+): void {
   context.lineWidth = 1;
   if (value.kind === 'line') {
+    if (!framesMeet(frameOfLine(value.points), seen)) return;
     context.strokeStyle = lookOf(value.line).colour;
-    for (const { points } of piecesIn(value.points, seenFrame(view))) {
+    for (const { points } of piecesIn(value.points, seen)) {
       context.beginPath();
       for (const point of points) {
         const [x, y] = toScreen(view, sheetPx(...point));

@@ -25,9 +25,10 @@ export function scanFilter({ inverted }: ScanLook): string {
 
 /** Paints a scan into a canvas with a look, over all of it. */
 export function paintWithLook(context: CanvasRenderingContext2D, look: ScanLook, paint: () => void): void {
-  context.filter = scanFilter(look);
+  // To set a filter takes milliseconds, also to set that there is none.
+  if (look.inverted) context.filter = scanFilter(look);
   paint();
-  context.filter = 'none';
+  if (look.inverted) context.filter = 'none';
   if (look.faded === 0) return;
   context.save();
   context.setTransform(1, 0, 0, 1, 0, 0);

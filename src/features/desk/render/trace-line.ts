@@ -2,6 +2,7 @@ import { Polyline } from 'fabric';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { SheetFrame } from '../model/viewport.ts';
 import { type LinePiece, piecesIn } from './clip-line.ts';
+import { frameOfLine } from './line-frame.ts';
 import { COLOURS, type EndMark, HALO } from './line-look.ts';
 import type { SceneLine } from './scene.ts';
 import { framesMeet, holdsFrame, seenBy } from './seen-by.ts';
@@ -26,11 +27,7 @@ export class TraceLine extends Polyline {
     this.item = item;
     this.points = item.points.map(([x, y]) => ({ x, y }));
     this.setBoundingBox(true);
-    const xs = item.points.map((point) => point[0]);
-    const ys = item.points.map((point) => point[1]);
-    const left = Math.min(...xs);
-    const top = Math.min(...ys);
-    this.frame = [left, top, Math.max(...xs) - left, Math.max(...ys) - top];
+    this.frame = frameOfLine(item.points);
   }
 
   override render(context: CanvasRenderingContext2D): void {
