@@ -158,14 +158,8 @@ describe('from a scan to a decision', () => {
     await reviewer.getByRole('button', { name: 'Independent solution' }).click();
     await reviewer.getByText(/no part of the record of revision A/).waitFor();
     await reviewer.getByRole('button', { name: 'Solve the section' }).click();
-    const beside = reviewer.getByRole('table', { name: 'Heads at the reading points' });
-    const row = beside.getByRole('row').filter({ hasText: 'P2' });
-    await row.waitFor();
-    const [traced = 0, solved = 0] = (await row.getByRole('cell').allTextContents()).map(Number.parseFloat);
-    // u = γw(h − z), so the exact head is z + u/γw: after Harr (1962).
-    const exact = 92 + exactPressure(0, 92) / 9.81;
-    expect(Math.abs(solved - exact)).toBeLessThan(0.05);
-    expect(Math.abs(traced - exact)).toBeLessThan(0.25);
+    // The ground below the apron goes on without a traced end.
+    await reviewer.getByText(/The outline of the section is not closed/).waitFor();
 
     await reviewer.getByRole('button', { name: 'Run again' }).click();
     await reviewer.getByRole('button', { name: 'Run again' }).click();
