@@ -1,0 +1,92 @@
+import { spawnSync } from 'node:child_process';
+import path from 'node:path';
+import type { Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { demoId } from '#server/demo/demo-ids.ts';
+import { DEMO_PASSWORD, engineer } from '#server/demo/demo-people.ts';
+import { axeFaults } from '#tests/support/axe.ts';
+import { openBrowser, PHONE, type TestBrowser } from '#tests/support/browser.ts';
+import { Caller } from '#tests/support/caller.ts';
+import { pdfDrawing } from '#tests/support/drawing-files.ts';
+import { faultsAt320, faultsAtTwiceTheText, focusFaults } from '#tests/support/layout-faults.ts';
+import { projectRoot, type RealServer, startRealServer } from '#tests/support/real-server.ts';
+import { PHONE_STATES, STATES, VECTORS } from '#tests/support/screen-states.ts';
+import { PUBLIC_SCREENS, SCREENS_OF, type Screen, signInToDemo } from '#tests/support/screens.ts';
+
+let server: RealServer;
+let browser: TestBrowser;
+/** One page for each person, so that the product is loaded once and not for every screen. */
+const pages = new Map<string, Page>();
+
+beforeAll(async () => {
+  server = await startRealServer();
+  const seed = path.join(projectRoot, 'server', 'scripts', 'seed.ts');
+  const { status, stderr } = spawnSync(process.execPath, ['--import', 'tsx', seed], { env: server.env });
+  if (status !== 0) throw new Error(`The demo was not made: ${stderr}`);
+  await addVectors();
+  browser = await openBrowser(server.address);
+  // Pages that are not there, and a sign-in that is refused, are screens too.
+  browser.expectConsoleError(/status of 40[0134]/);
+});
+afterAll(async () => {
+  await browser?.close();
+  await server?.close();
+});
+
+async function addVectors(): Promise<void> {
+  const caller = new Caller(server.address);
+  await caller.signIn(engineer.email, DEMO_PASSWORD);
+  const bytes = pdfDrawing([VECTORS.page]);
+  const { body } = await caller
+    .post(`/dams/${demoId(10)}/drawings`)
+    .attach('file', bytes, VECTORS.name)
+    .expect(201);
+  const state = async () => (await caller.get(`/drawings/${body.id}`)).body.job.state;
+  while ((await state()) !== 'done') await new Promise((resolve) => setTimeout(resolve, 200));
+}
+
+async function pageOf(person: string | null): Promise<Page> {
+  const kept = pages.get(person ?? '');
+  if (kept) return kept;
+  const page = await browser.newPage();
+  if (person !== null) await signInToDemo(page, person);
+  pages.set(person ?? '', page);
+  return page;
+}
+
+async function opened(person: string | null, screen: Screen): Promise<Page> {
+  const page = await pageOf(person);
+  await page.goto(screen.path);
+  await screen.open(page);
+  return page;
+}
+
+const named = (screens: readonly Screen[]) => screens.map((screen) => [screen.name, screen] as const);
+const all = [
+  { person: null, screens: PUBLIC_SCREENS },
+  ...SCREENS_OF,
+  { person: engineer.email, screens: STATES },
+];
+
+describe.each(all)('to $person', ({ person, screens }) => {
+  it.each(named(screens))('%s has no fault', async (_name, screen) => {
+    const page = await opened(person, screen);
+    const faults = [
+      ...(await axeFaults(page, screen.name)),
+      ...(await faultsAt320(page, screen.name)),
+      ...(await faultsAtTwiceTheText(page, screen.name)),
+      ...(await focusFaults(page, screen.name)),
+    ];
+    expect(faults).toEqual([]);
+  });
+});
+
+describe('on a telephone', () => {
+  it.each(named(PHONE_STATES))('%s has no fault', async (_name, screen) => {
+    const page = await pageOf(engineer.email);
+    await page.setViewportSize(PHONE);
+    await page.goto(screen.path);
+    await screen.open(page);
+    expect(await axeFaults(page, screen.name)).toEqual([]);
+  });
+});
