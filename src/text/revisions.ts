@@ -3,7 +3,7 @@ import { inLanguage } from './language.ts';
 /** Words of sending for checking and of the check itself. */
 const enSendingText = {
   button: 'Send for checking',
-  /** The same on a telephone, where the bar has no room for more. */
+  /** The same on a telephone or tablet, where the bar has no room for more. */
   short: 'Send',
   title: (label: string) => `Send for checking as revision ${label}`,
   lead: 'The net and its figures are frozen as they stand and kept. The reviewers get a mail with a link.',

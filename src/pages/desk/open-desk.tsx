@@ -98,8 +98,8 @@ function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detai
             ) : null}
             {detail.can.includes('net.send') && readOnly === null ? (
               <Button look="main" aria-label={sendingText.button} onClick={() => setDialog('send')}>
-                <span className="sm:hidden">{sendingText.short}</span>
-                <span className="max-sm:hidden">{sendingText.button}</span>
+                <span className="lg:hidden">{sendingText.short}</span>
+                <span className="max-lg:hidden">{sendingText.button}</span>
               </Button>
             ) : null}
           </>

@@ -54,8 +54,9 @@ function ranged(least: number, most: number, usual: number): PaneRange {
 }
 
 /** The sizes that suit the widths of the window named in the styles. */
-function usualPx(pane: PaneId, { widthPx }: WindowSize): number {
-  if (pane === 'figures') return 232;
+function usualPx(pane: PaneId, { widthPx, heightPx }: WindowSize): number {
+  // Upright the heads and buttons of the tables take several rows, and there is height enough for the figures too.
+  if (pane === 'figures') return heightPx > widthPx ? 344 : 232;
   if (pane === 'tools') return widthPx < 1080 ? 168 : 188;
   // On a tablet held upright the sheet would otherwise be as narrow as the notes.
   if (widthPx < 960) return 288;

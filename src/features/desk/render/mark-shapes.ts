@@ -81,7 +81,9 @@ const label: Painter = (context, mark) => {
     context.beginPath();
     context.moveTo(0, 0);
     context.lineTo(dx, dy);
-    haloStroke(context, mark, 0.8);
+    // Without a halo, which would wipe out a label drawn before that it crosses.
+    context.lineWidth = 0.8;
+    context.stroke();
   }
   context.fillStyle = COLOURS.film;
   context.lineWidth = mark.strong ? 2 : 1;

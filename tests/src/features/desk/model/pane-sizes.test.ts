@@ -18,6 +18,7 @@ describe('the panes about the sheet', () => {
       expect(parsePanes(kept)).toEqual(USUAL_PANES);
     }
     expect(panePx('margin', desktop, USUAL_PANES)).toBe(372);
+    expect(panePx('figures', { widthPx: 820, heightPx: 1180 }, USUAL_PANES)).toBe(344);
   });
 
   it('come back as they were left', () => {
