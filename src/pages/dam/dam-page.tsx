@@ -13,7 +13,6 @@ import { paths } from '#client/lib/paths.ts';
 import { compareText } from '#client/text/compare.ts';
 import { damSeepageText } from '#client/text/dam-seepage.ts';
 import { damsText as text } from '#client/text/dams.ts';
-import { registerLinkText } from '#client/text/register-links.ts';
 import { waitingText } from '#client/text/waiting.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 import { AppFrame } from '../app-frame.tsx';
@@ -33,9 +32,6 @@ export function DamPage() {
         lead={<DamFacts dam={dam} />}
         action={
           <>
-            <ButtonLink look="quiet" to={paths.register(dam.id)}>
-              {registerLinkText.ofDam}
-            </ButtonLink>
             <ButtonLink look="quiet" to={paths.damSeepage(dam.id)}>
               {damSeepageText.title}
             </ButtonLink>

@@ -9,8 +9,10 @@ import { UploadButtons } from '#client/features/drawings/components/upload-butto
 import { UploadList } from '#client/features/drawings/components/upload-list.tsx';
 import { useDroppedFiles, usePastedFiles } from '#client/features/drawings/upload/incoming-files.ts';
 import { uploadQueue, useUploads } from '#client/features/drawings/upload/use-uploads.ts';
+import { paths } from '#client/lib/paths.ts';
 import { drawingsText as text } from '#client/text/drawings.ts';
 import { netFileText } from '#client/text/net-files.ts';
+import { registerLinkText } from '#client/text/register-links.ts';
 import type { DamDto } from '#shared/contract/dams.ts';
 
 /** The register of drawings, and every way in which a file comes to it. */
@@ -46,7 +48,8 @@ export function DrawingsPanel({ dam, archived }: { dam: DamDto; archived: boolea
           {text.dropHint}
         </p>
       ) : null}
-      <p className="m-0 px-3.5 pb-2.5 text-sm">
+      <p className="m-0 flex flex-wrap gap-x-5 gap-y-1 px-3.5 pb-2.5 text-sm">
+        <Link to={paths.register(dam.id)}>{registerLinkText.ofDam}</Link>
         <Link to={archived ? '?' : '?show=put-away'}>{archived ? text.hidePutAway : text.showPutAway}</Link>
       </p>
       {isTakingNet ? (

@@ -152,11 +152,12 @@ function NetMark({ net }: { net: NetSummary }) {
 
 /** Notes open, and those in which something is new to the reader. */
 function NotesMark({ net: { openNotes, unreadNotes = 0 } }: { net: NetSummary }) {
-  const words = [
-    openNotes > 0 ? text.notesOpen(openNotes) : '',
-    unreadNotes > 0 ? text.notesUnread(unreadNotes) : '',
-  ];
-  return <span className="font-semibold text-attention">{words.filter(Boolean).join(', ')}</span>;
+  return (
+    <span className="font-semibold whitespace-nowrap text-attention">
+      {openNotes > 0 ? <span className="block">{text.notesOpen(openNotes)}</span> : null}
+      {unreadNotes > 0 ? <span className="block">{text.notesUnread(unreadNotes)}</span> : null}
+    </span>
+  );
 }
 
 const capitalised = (words: string) => words.charAt(0).toLocaleUpperCase() + words.slice(1);

@@ -23,10 +23,6 @@ export function RegisterEntry({ row }: { row: RegisterRow }) {
         <Thumbnail row={row} />
       </Cell>
       <Cell>
-        <span className="block text-xs text-ink-2">
-          {text.kindOf(row.kind)}
-          {row.isArchived ? `, ${text.putAwayMark}` : ''}
-        </span>
         <Link
           to={placeOf(row)}
           {...{ [ROW_LINK]: '' }}
@@ -34,7 +30,8 @@ export function RegisterEntry({ row }: { row: RegisterRow }) {
         >
           {title}
         </Link>
-        {beside ? <span className="block break-words text-ink-2">{beside}</span> : null}
+        {row.isArchived ? <span className="ml-2 text-ink-2">{text.putAwayMark}</span> : null}
+        <span className="block break-words text-ink-2">{beside}</span>
         <Found row={row} />
       </Cell>
       <Cell>{row.damName}</Cell>
@@ -52,13 +49,15 @@ export function RegisterEntry({ row }: { row: RegisterRow }) {
   );
 }
 
+/** What the row is called, and of what kind and where it is. */
 function namesOf(row: RegisterRow): { title: string; beside: string } {
   const drawing = drawingName(row.drawing);
-  if (row.section === null) return { title: drawing, beside: row.drawing.title };
+  const kind = text.kindOf(row.kind);
+  const joined = (...words: string[]) => words.filter(Boolean).join(', ');
+  if (row.section === null) return { title: drawing, beside: joined(kind, row.drawing.title) };
   const section = sectionLabel(row.section);
-  if (row.net === null)
-    return { title: section, beside: [drawing, row.drawing.title].filter(Boolean).join(', ') };
-  return { title: row.net, beside: `${drawing}, ${section}` };
+  if (row.net === null) return { title: section, beside: joined(kind, drawing, row.drawing.title) };
+  return { title: row.net, beside: joined(kind, drawing, section) };
 }
 
 function placeOf(row: RegisterRow): string {
