@@ -83,6 +83,13 @@ export const SCREENS_OF: ReadonlyArray<{ readonly person: string; readonly scree
       { name: 'dam', path: `/dams/${DAM}`, open: heading('Harrow Fen Dam') },
       { name: 'dam settings', path: `/dams/${DAM}/settings`, open: heading(/./) },
       { name: 'dam activity', path: `/dams/${DAM}/activity`, open: heading(/./) },
+      {
+        name: 'nets compared',
+        path: `/dams/${DAM}/compare?one=net:${fullSupply}&other=revision:${REVISION}`,
+        async open(page) {
+          await page.getByRole('region', { name: 'Reading points' }).waitFor();
+        },
+      },
       { name: 'seepage of the dam', path: `/dams/${DAM}/seepage`, open: heading(/./) },
       {
         name: 'drawing',
@@ -174,6 +181,24 @@ export const SCREENS_OF: ReadonlyArray<{ readonly person: string; readonly scree
       },
       { name: 'desk, being checked', path: `/nets/${apron}`, open: desk },
       { name: 'calculation sheet', path: `/revisions/${REVISION}/sheet`, open: heading(/./) },
+      {
+        name: 'check, run again',
+        path: `/revisions/${REVISION}`,
+        async open(page) {
+          await page.getByRole('button', { name: 'Run again' }).click();
+          await page.getByRole('button', { name: 'Run again' }).click();
+          await page.getByText(/figures are equal to the last digit shown/).waitFor();
+        },
+      },
+      {
+        name: 'check, independent solution',
+        path: `/revisions/${REVISION}`,
+        async open(page) {
+          await page.getByRole('button', { name: 'Independent solution' }).click();
+          await page.getByRole('button', { name: 'Solve the section' }).click();
+          await page.getByRole('alert').waitFor({ timeout: 60_000 });
+        },
+      },
     ],
   },
   {

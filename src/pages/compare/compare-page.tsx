@@ -1,6 +1,8 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
+import { useMemo } from 'react';
 import { Link, useNavigate, useParams, useSearchParams } from 'react-router-dom';
 import { Button } from '#client/components/button.tsx';
+import { Loading } from '#client/components/loading.tsx';
 import { Page } from '#client/components/page.tsx';
 import { Empty, Panel } from '#client/components/panel.tsx';
 import { damQuery } from '#client/features/dams/api/dam-queries.ts';
@@ -12,6 +14,7 @@ import type { DrawingDto } from '#shared/contract/drawings.ts';
 import { AppFrame } from '../app-frame.tsx';
 import { useDamLive } from '../use-dam-live.ts';
 import { Compared } from './compared.tsx';
+import type { ComparedNet } from './compared-net.ts';
 import { parseSide } from './parse-side.ts';
 import { SideChoice } from './side-choice.tsx';
 import { type LoadedSide, useComparedNet } from './use-compared-net.ts';
@@ -92,24 +95,24 @@ interface OutcomeProps {
 
 /** The comparison, or what it still waits for. */
 function Outcome({ damId, damName, drawings, sides }: OutcomeProps) {
-  const [one, other] = sides;
+  const [one, other] = [useFramed(sides[0].net, drawings), useFramed(sides[1].net, drawings)];
   if (sides.some(({ error }) => error)) return null;
   if (sides.some(({ unread }) => unread !== null && unread.damId !== damId))
     return <Said wrong>{text.otherDam}</Said>;
   const failed = sides.find(({ unreadable }) => unreadable);
   if (failed) return <Said wrong>{text.readingFailed(failed.unread?.name ?? '')}</Said>;
-  if (one.net && other.net)
-    return <Compared damName={damName} one={framed(one.net, drawings)} other={framed(other.net, drawings)} />;
-  const underWay = sides.find(({ unread, net }) => unread !== null && net === null);
-  if (sides.every(({ unread }) => unread !== null) && underWay)
-    return <Said>{text.reading(underWay.unread?.name ?? '')}</Said>;
-  return <Said>{text.chooseBoth}</Said>;
+  if (one && other) return <Compared damName={damName} one={one} other={other} />;
+  if (sides.some(({ asked }) => !asked)) return <Said>{text.chooseBoth}</Said>;
+  const read = sides.find(({ unread, net }) => unread !== null && net === null);
+  return read?.unread ? <Said>{text.reading(read.unread.name)}</Said> : <Loading />;
 }
 
 /** A revision does not say which part of the sheet its section is; the drawing does. */
-function framed<T extends LoadedSide['net'] & object>(net: T, drawings: readonly DrawingDto[]): T {
-  const section = drawings.flatMap(({ sections }) => sections).find(({ id }) => id === net.section.id);
-  return net.frame === null && section ? { ...net, frame: section.frame } : net;
+function useFramed(net: ComparedNet | null, drawings: readonly DrawingDto[]): ComparedNet | null {
+  return useMemo(() => {
+    const section = drawings.flatMap(({ sections }) => sections).find(({ id }) => id === net?.section.id);
+    return net?.frame === null && section ? { ...net, frame: section.frame } : net;
+  }, [net, drawings]);
 }
 
 function Said({ wrong = false, children }: { wrong?: boolean; children: string }) {

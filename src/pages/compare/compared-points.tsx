@@ -17,10 +17,13 @@ interface ComparedPointsProps {
   points: readonly GroupBeside[];
   units: FigureUnits;
   names: ComparedNames;
+  /** What gives no figures at all is said once, above everything. */
+  unfinished: { one: boolean; other: boolean };
 }
 
 /** The reading points of both nets, matched by name: where they lie, their heads and pressures. */
-export function ComparedPoints({ points, units, names }: ComparedPointsProps) {
+export function ComparedPoints({ points, ...rest }: ComparedPointsProps) {
+  const { units } = rest;
   const head = 'border-b border-rule px-3.5 py-[5px] text-sm font-semibold text-ink-2';
   return (
     <Table caption={text.points}>
@@ -47,25 +50,19 @@ export function ComparedPoints({ points, units, names }: ComparedPointsProps) {
       </thead>
       <tbody>
         {points.map((group) => (
-          <PointRows key={`${group.one?.id} ${group.other?.id}`} group={group} units={units} names={names} />
+          <PointRows key={`${group.one?.id} ${group.other?.id}`} group={group} {...rest} />
         ))}
       </tbody>
     </Table>
   );
 }
 
-function PointRows({
-  group,
-  units,
-  names,
-}: {
-  group: GroupBeside;
-  units: FigureUnits;
-  names: ComparedNames;
-}) {
+type PointRowsProps = Omit<ComparedPointsProps, 'points'> & { group: GroupBeside };
+
+function PointRows({ group, units, names, unfinished }: PointRowsProps) {
   const remarks = [
-    [names.one, remarkOf(group.one)],
-    [names.other, remarkOf(group.other)],
+    [names.one, unfinished.one ? '' : remarkOf(group.one)],
+    [names.other, unfinished.other ? '' : remarkOf(group.other)],
   ].filter(([, remark]) => remark !== '');
   return (
     <>

@@ -67,7 +67,15 @@ export function Compared({ damName, one, other }: ComparedProps) {
         {points.length === 0 ? (
           <Empty>{text.noPoints}</Empty>
         ) : (
-          <ComparedPoints points={points} units={units} names={names} />
+          <ComparedPoints
+            points={points}
+            units={units}
+            names={names}
+            unfinished={{
+              one: one.reading.state === 'unfinished',
+              other: other.reading.state === 'unfinished',
+            }}
+          />
         )}
       </Panel>
       {others.length === 0 ? null : (

@@ -8,6 +8,8 @@ import { useLive } from '#client/lib/use-live.ts';
 import { type ComparedNet, draftOf, frozenOf, type UnreadNet } from './compared-net.ts';
 
 export interface LoadedSide {
+  /** Whether a net was chosen for it. */
+  asked: boolean;
   /** The net as soon as it is known, its reading as soon as it is worked out. */
   unread: UnreadNet | null;
   net: ComparedNet | null;
@@ -47,13 +49,20 @@ export function useComparedNet(side: ComparedSide | null): LoadedSide {
   });
   const frozen = useMemo(() => (revision.data ? frozenOf(revision.data) : null), [revision.data]);
   if (side?.kind === 'revision')
-    return { unread: frozen, net: frozen, error: revision.error, unreadable: false };
+    return {
+      asked: true,
+      unread: frozen,
+      net: frozen,
+      error: frozen ? null : revision.error,
+      unreadable: false,
+    };
   // What is kept from before may be of another net.
   const net = draft !== null && read.data?.netId === draft.netId ? read.data : null;
   return {
+    asked: side !== null,
     unread: draft,
-    net: side === null ? null : net,
-    error: side === null ? null : detail.error,
-    unreadable: side !== null && read.isError,
+    net,
+    error: draft ? null : detail.error,
+    unreadable: draft !== null && read.isError,
   };
 }
