@@ -45,15 +45,24 @@ function sessionSecret(storageDir, env, cluster) {
 }
 
 /**
+ * Runs what is pending.
+ * @param {string} root
+ * @param {OpenDatabase} database
+ */
+export async function bringUpToDate(root, database) {
+  if (await isMigrationPending(root, database.cluster)) {
+    await runScript(root, 'migrate', 'brought up to date', database.ownerEnv);
+  }
+}
+
+/**
  * Runs what is pending, and fills an empty database with the demo, except in production.
  * @param {string} root
  * @param {string} storageDir
  * @param {OpenDatabase} database
  */
 export async function prepareDatabase(root, storageDir, database) {
-  if (await isMigrationPending(root, database.cluster)) {
-    await runScript(root, 'migrate', 'brought up to date', database.ownerEnv);
-  }
+  await bringUpToDate(root, database);
   const isProduction = database.ownerEnv.NODE_ENV === 'production';
   if (isProduction || existsSync(startFiles(storageDir).demoSignIns)) return;
   say('Drawing the demo, if nobody is in the database yet.');

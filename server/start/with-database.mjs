@@ -1,7 +1,7 @@
 import { existsSync, mkdirSync } from 'node:fs';
 import path from 'node:path';
 import { claimStorage, isStartProcess } from './already-running.mjs';
-import { openDatabase } from './database-steps.mjs';
+import { bringUpToDate, openDatabase } from './database-steps.mjs';
 import { readJson } from './kept-file.mjs';
 import { live } from './life.mjs';
 import { faults } from './messages.mjs';
@@ -14,6 +14,8 @@ import { runCommand } from './run-command.mjs';
  * node server/start/with-database.mjs create-admin
  */
 const SCRIPTS = ['migrate', 'revert', 'seed', 'create-admin', 'restore-dam'];
+/** Scripts that work in the tables, which a new installation has not got before its first start. */
+const WORK_IN_TABLES = ['seed', 'create-admin', 'restore-dam'];
 const storageDir = storageDirOf(process.env);
 
 await live(storageDir, async (life) => {
@@ -29,6 +31,8 @@ await live(storageDir, async (life) => {
   const database = await openDatabase(storageDir, process.env);
   if (database.cluster?.startedHere) life.atEnd(database.cluster.stop);
   life.check();
+  // A running product has brought its tables up to date itself, to what it can work with.
+  if (!isRunning && WORK_IN_TABLES.includes(name)) await life.step(bringUpToDate(projectRoot, database));
   const script = path.join(projectRoot, 'server', 'scripts', `${name}.ts`);
   const outcome = await runCommand(process.execPath, ['--import', 'tsx', script, ...args], {
     cwd: projectRoot,
