@@ -130,16 +130,14 @@ function profileFigures({ unitSystem }: FlowNetDocument, profile: ProfileReading
 
 function exitFigures({ unitSystem }: FlowNetDocument, { exits }: NetReading): FigureToCheck[] {
   const { length } = unitNames(unitSystem);
-  return exits
-    .filter(({ cellGradient }) => cellGradient !== null)
-    .map((exit) =>
-      further(
-        `exit ${exit.outlet} ${exit.left} ${exit.right}`,
-        `Exit at offset ${fixedText(exit.offset, 1)} ${length}`,
-        'gradient i and factor',
-        `${plainText(exit.cellGradient, 3)}, factor ${plainText(exit.factor, 3)}`,
-      ),
-    );
+  return exits.flatMap(({ outlet, left, right, offset, cellGradient, factor }) => {
+    const key = `exit ${outlet} ${left} ${right}`;
+    const name = `Exit at offset ${fixedText(offset, 1)} ${length}`;
+    return [
+      ...(cellGradient === null ? [] : [further(`${key} i`, name, 'gradient', plainText(cellGradient, 3))]),
+      ...(factor === null ? [] : [further(`${key} factor`, name, 'factor', plainText(factor, 3))]),
+    ];
+  });
 }
 
 function stabilityFigures({ unitSystem }: FlowNetDocument, { stability }: NetReading): FigureToCheck[] {

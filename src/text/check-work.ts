@@ -23,7 +23,7 @@ const enBlind = {
   showPlaces: 'Show where the points lie',
   showPlacesHint: 'Shows their places without figures. The record tells that you asked.',
   placesShown: 'The marks on the sheet show where the engineer has the points.',
-  engineers: (name: string) => `${name} of the engineer`,
+  own: (name: string) => `${name}, own`,
   unnamed: 'unnamed point',
   read: (name: string) => `Read ${name}`,
   place: 'Place on the sheet',

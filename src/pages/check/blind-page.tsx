@@ -86,9 +86,7 @@ export function BlindPage({ view }: { view: BlindView }) {
                 className="min-h-0 flex-1"
               />
             </div>
-            <aside
-              className={classNames(place('reading'), 'overflow-y-auto border-l-[1.5px] border-ink bg-film')}
-            >
+            <aside className={classNames(place('reading'), 'overflow-y-auto bg-film')}>
               <BlindForm
                 view={view}
                 typed={typed}

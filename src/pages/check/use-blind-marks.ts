@@ -21,8 +21,8 @@ export function useBlindMarks(store: DeskStore, view: BlindView, typed: TypedRea
       const own = placeOf(view, typed.points[id]);
       const words = name || text.unnamed;
       const drawn = engineers.get(id);
-      if (at !== null && drawn) marks.set(drawn, mark(text.engineers(words), at, order));
-      if (own !== null) marks.set(id, mark(words, own, order));
+      if (at !== null && drawn) marks.set(drawn, mark(words, at, order));
+      if (own !== null) marks.set(id, mark(at === null ? words : text.own(words), own, order));
     });
     const shown = entitiesOf(store.getState().document, 'readingPoint').map(({ id }) => id);
     store.replay([
