@@ -71,5 +71,6 @@ const en = {
   preview: (kind: string) => `Preview: ${kind}`,
   mayWait: 'May wait for a daily digest.',
   neverWaits: 'Always sent at once.',
+  atDigestHour: 'Sent at seven in the morning by the clock of its reader.',
 } as const;
 export const mailsText = inLanguage({ en });

@@ -210,8 +210,8 @@ const outcomeOf = ({ status, code }: Answer): Outcome => {
 describe('the routes', () => {
   it('state a rule each, and those open to all or to all who sign in are the ones thought about', () => {
     const by = (who: string) => routes.filter((route) => route.access.who === who).map(nameOf);
-    expect(by('signedLink')).toEqual(SIGNED_LINK);
     expect(by('public').sort()).toEqual([...PUBLIC].sort());
+    expect(by('signedLink')).toEqual(SIGNED_LINK);
     expect(by('signedIn').sort()).toEqual([...SIGNED_IN].sort());
     expect(new Set(routes.map(nameOf)).size).toBe(routes.length);
   });

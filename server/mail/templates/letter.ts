@@ -131,18 +131,22 @@ function setInColumns(heads: readonly string[][], rows: readonly string[][]): st
 }
 
 const BODY = 'font-family:Arial,Helvetica,sans-serif;font-size:15px;line-height:1.5;color:#1c2733';
-const RULE = 'border-bottom:1px solid #b9c3c2;padding:4px 12px 4px 0';
+const RULE = 'border-bottom:1px solid #b9c3c2;padding:4px 12px 4px 0;vertical-align:top';
+/** A hash has no place to break at, and would make the letter wider than a telephone. */
+const BREAKS = 'word-break:break-word;overflow-wrap:anywhere';
+/** A figure and its ± stay on one line. */
+const held = (figure: string) => figure.replaceAll(' ± ', '\u00a0±\u00a0');
 
 function asHtml(parts: LetterParts): string {
   const { subject, paragraphs, facts = [], figures, items = [], link, closing } = parts;
-  const rows = facts.map(([name, value]) => row([name, value], 'td', () => 'left')).join('');
+  const rows = facts.map(factHtml).join('');
   return [
     `<!doctype html><html lang="en"><head><meta charset="utf-8"><title>${escapeHtml(oneLine(subject))}</title></head>`,
     `<body style="${BODY}">`,
     ...paragraphs.map((text) => `<p>${lines(text)}</p>`),
     ...items.map(itemHtml),
     parts.hasPicture ? PICTURE_PLACE : '',
-    rows && `<table style="border-collapse:collapse">${rows}</table>`,
+    rows && `<table style="border-collapse:collapse;font-size:14px">${rows}</table>`,
     figures && figures.rows.length > 0 ? htmlTable(figures) : '',
     `<p><a href="${escapeHtml(link.url)}">${escapeHtml(link.label)}</a></p>`,
     `<p style="font-size:13px;color:#52606b">${escapeHtml(closing)}</p>`,
@@ -155,14 +159,17 @@ const lines = (text: string) => escapeHtml(text).replaceAll('\n', '<br>');
 const itemHtml = ({ title, text, url }: LetterItem) =>
   `<p style="border-top:1px solid #b9c3c2;padding-top:8px"><a href="${escapeHtml(url)}">${escapeHtml(title)}</a><br>${lines(text)}</p>`;
 
+const factHtml = ([name, value]: [string, string]) =>
+  `<tr><td style="${RULE};white-space:nowrap">${escapeHtml(name)}</td><td style="${RULE};${BREAKS}">${escapeHtml(value)}</td></tr>`;
+
 function htmlTable({ heads, rows }: Figures): string {
   const align = (n: number) => (n === 0 ? 'left' : 'right');
-  return `<table style="border-collapse:collapse;margin-top:12px">${row(heads, 'th', align)}${rows
+  return `<table style="border-collapse:collapse;margin-top:12px;font-size:14px">${row(heads, 'th', align)}${rows
     .map((cells) => row(cells, 'td', align))
     .join('')}</table>`;
 }
 
 const row = (cells: string[], tag: 'td' | 'th', align: (n: number) => string) =>
   `<tr>${cells
-    .map((cell, n) => `<${tag} style="${RULE};text-align:${align(n)}">${escapeHtml(cell)}</${tag}>`)
+    .map((cell, n) => `<${tag} style="${RULE};text-align:${align(n)}">${escapeHtml(held(cell))}</${tag}>`)
     .join('')}</tr>`;

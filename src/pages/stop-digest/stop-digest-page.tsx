@@ -15,10 +15,12 @@ export function StopDigestPage() {
   if (stop.isSuccess) return <Told title={text.stopTitle} words={text.stopped} />;
   return (
     <PublicLayout title={text.stopTitle} lead={text.stopLead}>
-      <ProblemNote error={stop.error} />
-      <Button look="main" busy={stop.isPending} onClick={() => stop.mutate()}>
-        {text.stop}
-      </Button>
+      <div className="flex flex-col items-start gap-3">
+        <ProblemNote error={stop.error} />
+        <Button look="main" busy={stop.isPending} onClick={() => stop.mutate()}>
+          {text.stop}
+        </Button>
+      </div>
     </PublicLayout>
   );
 }

@@ -14,6 +14,7 @@ export function SendAgain({ mail, inList = false }: { mail: MailDto; inList?: bo
       <ProblemNote error={sendAgain.error} />
       <Button
         look={inList ? 'quiet' : 'plain'}
+        className="whitespace-nowrap"
         aria-label={inList ? text.sendAgainOf(mail.subject) : undefined}
         busy={sendAgain.isPending}
         onClick={() => sendAgain.mutate(undefined, { onSuccess: () => notice(text.sendAgainDone) })}
