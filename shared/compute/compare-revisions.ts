@@ -140,7 +140,7 @@ const LABELS: Record<string, string> = {
   headwater: 'Headwater',
   tailwater: 'Tailwater',
   gammaW: 'Unit weight of water',
-  source: 'Source',
+  source: 'Source of the levels',
   headwaterPlusMinus: '± of the headwater',
   tailwaterPlusMinus: '± of the tailwater',
   gammaWPlusMinus: '± of the unit weight',
@@ -163,7 +163,9 @@ const LABELS: Record<string, string> = {
 
 function inputFacts(value: DocumentEntity | undefined): Facts {
   const entries = Object.entries(value ?? {}).filter(([key]) => key in LABELS);
-  return Object.fromEntries(entries.map(([key, fact]) => [LABELS[key] ?? key, asFact(fact)]));
+  const label = (key: string) =>
+    key === 'source' && value?.kind === 'permeability' ? 'Source of the permeability' : LABELS[key];
+  return Object.fromEntries(entries.map(([key, fact]) => [label(key) ?? key, asFact(fact)]));
 }
 
 const asFact = (value: unknown): string | number | null =>

@@ -60,7 +60,7 @@ const en = {
   ways: { over: 'Over each other', beside: 'Side by side' },
   drawOver: (name: string) => `Lines of ${name} over it, thin and dashed`,
   sheetOf: (name: string) => `Sheet of ${name}`,
-  linked: 'Both views show the same part of the section: move or zoom one, and the other follows.',
+  linked: 'Both views show the same offsets and elevations: move or zoom one, and the other follows.',
   notLinked: (names: string) => `The views are not tied to one another: ${names} not set out yet.`,
   isNotSetOut: (name: string) => `${name} is`,
   areNotSetOut: 'both are',

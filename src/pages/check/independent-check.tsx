@@ -37,10 +37,10 @@ export function IndependentCheck({ payload, store, checks, views, onSheet }: Ind
     <section aria-label={independentText.title} className="h-full overflow-auto bg-film">
       <div className="flex flex-col gap-2 px-2.5 py-2">
         {views}
-        <p className="m-0 text-ink-2">
-          {runAgainText.independent.notRecord(payload.label, payload.engineVersion, ENGINE_VERSION)}
-        </p>
-        <Aside>{independentText.lead}</Aside>
+        <Aside>
+          {runAgainText.independent.notRecord(payload.label, payload.engineVersion, ENGINE_VERSION)}{' '}
+          {independentText.lead}
+        </Aside>
         <SolveControl state={independent} again={result !== null} checks={checks} onPlace={lookAt} />
         {result ? <Result beside={result.beside} payload={payload} checks={checks} onPlace={lookAt} /> : null}
       </div>

@@ -21,6 +21,9 @@ interface RunAgainPaneProps {
   views: ReactNode;
 }
 
+/** The buttons stand beside the names of the tables, as on the desk. */
+const SMALL = 'px-2 py-[2px] text-sm';
+
 /** A frozen revision computed with the present engine, beside its record, which stays as it was. */
 export function RunAgainPane({ payload, again, views }: RunAgainPaneProps) {
   const { label, engineVersion } = payload;
@@ -28,27 +31,27 @@ export function RunAgainPane({ payload, again, views }: RunAgainPaneProps) {
   return (
     <section aria-label={text.views.again} className="h-full overflow-auto bg-film">
       <div className="flex flex-col gap-2 px-2.5 py-2">
-        {views}
-        <p className="m-0 text-ink-2">
-          {text.lead(label, engineVersion, ENGINE_VERSION)} {text.notStored}
-        </p>
-        <div className="flex flex-wrap items-center gap-3">
+        <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
+          <div className="mr-auto">{views}</div>
+          <span role="status">{working ? text.working : ''}</span>
           {working ? (
-            <Button look="quiet" onClick={again.cancel}>
+            <Button look="quiet" className={SMALL} onClick={again.cancel}>
               {text.cancel}
             </Button>
           ) : (
-            <Button look={again.result ? 'quiet' : 'plain'} onClick={again.run}>
+            <Button look={again.result ? 'quiet' : 'plain'} className={SMALL} onClick={again.run}>
               {again.result ? text.runAnew : text.run}
             </Button>
           )}
           {again.result && !working ? (
-            <Button look="quiet" onClick={() => download(payload, again.result!)}>
+            <Button look="quiet" className={SMALL} onClick={() => download(payload, again.result!)}>
               {text.download}
             </Button>
           ) : null}
-          <span role="status">{working ? text.working : ''}</span>
         </div>
+        <Aside>
+          {text.lead(label, engineVersion, ENGINE_VERSION)} {text.notStored}
+        </Aside>
         {again.state === 'failed' ? (
           <p role="alert" className="m-0 bg-doubt p-2 text-wrong">
             {text.failed}

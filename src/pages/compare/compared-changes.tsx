@@ -5,7 +5,8 @@ import { ChangedThings } from '#client/features/revisions/components/revision-ch
 import { NO_FIGURE, plainText, sentenceText } from '#client/lib/figures.ts';
 import { compareText as text } from '#client/text/compare.ts';
 import { alignedWith } from '#shared/compute/compare-figures/align-nets.ts';
-import { compareRevisions } from '#shared/compute/compare-revisions.ts';
+import { compareRevisions, type FrozenNet } from '#shared/compute/compare-revisions.ts';
+import { SECTION_KINDS } from '#shared/contract/document.ts';
 import type { ChangedFact } from '#shared/contract/revision-comparison.ts';
 import type { ComparedNet } from './compared-net.ts';
 
@@ -18,10 +19,12 @@ interface ComparedChangesProps {
 export function ComparedChanges({ one, other }: ComparedChangesProps) {
   const sameUnits = one.document.unitSystem === other.document.unitSystem;
   const onOneSheet = one.sheet.id === other.sheet.id;
-  const comparison = useMemo(
-    () => (sameUnits ? compareRevisions(one, alignedWith(one, other)) : null),
-    [sameUnits, one, other],
-  );
+  const sameSection = one.section.id === other.section.id;
+  const comparison = useMemo(() => {
+    if (!sameUnits) return null;
+    const [a, b] = sameSection ? [one, other] : [withoutSection(one), withoutSection(other)];
+    return compareRevisions(a, alignedWith(a, b));
+  }, [sameUnits, sameSection, one, other]);
   if (comparison === null)
     return (
       <Panel title={text.changes} look="register">
@@ -44,6 +47,14 @@ export function ComparedChanges({ one, other }: ComparedChangesProps) {
   );
 }
 
+/** Known points and set-out of another section are others by the nature of the thing. */
+function withoutSection({ document, reading }: ComparedNet): FrozenNet {
+  const entities = Object.entries(document.entities).filter(
+    ([, { value }]) => !SECTION_KINDS.includes(value.kind),
+  );
+  return { document: { ...document, entities: Object.fromEntries(entities) }, reading };
+}
+
 function Inputs({ inputs, one, other }: { inputs: readonly ChangedFact[]; one: string; other: string }) {
   return (
     <Table caption={text.inputs}>
@@ -56,7 +67,7 @@ function Inputs({ inputs, one, other }: { inputs: readonly ChangedFact[]; one: s
       </thead>
       <tbody>
         {inputs.map(({ label, before, after }) => (
-          <tr key={label}>
+          <tr key={`${label} ${before} ${after}`}>
             <th scope="row" className="border-b border-rule-2 px-3.5 py-[5px] text-left font-normal">
               {label}
             </th>

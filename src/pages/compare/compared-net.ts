@@ -8,6 +8,7 @@ import type { SectionDto, SheetDto } from '#shared/contract/drawings.ts';
 import type { NetDetailDto } from '#shared/contract/nets.ts';
 import type { NetReading } from '#shared/contract/reading.ts';
 import type { RevisionDto } from '#shared/contract/revisions.ts';
+import { sectionTitle } from '#shared/text/section-title.ts';
 
 /** One of the two nets: a draft with its reading of now, or a revision with the frozen one. */
 export interface ComparedNet {
@@ -66,4 +67,19 @@ export function frozenOf({ payload, sheet, summary }: RevisionDto): ComparedNet 
     reading,
     engineVersion,
   };
+}
+
+/** The two with names by which they can be told apart: by the section where nets of two sections have the same name. */
+export function namedApart(one: ComparedNet, other: ComparedNet): [ComparedNet, ComparedNet] {
+  if (one.name !== other.name) return [one, other];
+  const [a, b] = [one, other].map(({ section, name }) => `${sectionTitle(section.name)}, ${name}`);
+  if (a !== b)
+    return [
+      { ...one, name: a! },
+      { ...other, name: b! },
+    ];
+  return [
+    { ...one, name: `${text.one}: ${one.name}` },
+    { ...other, name: `${text.other}: ${other.name}` },
+  ];
 }

@@ -5,7 +5,7 @@ import { compareText as text } from '#client/text/compare.ts';
 import { figureWords } from '#client/text/figure-names.ts';
 import type { FigureGroup, FigureName } from '#shared/compute/compare-figures/figure-types.ts';
 import type { FigureBeside, GroupBeside } from '#shared/compute/compare-figures/figures-beside.ts';
-import { type ComparedNames, FigureCells, OnlyIn } from './compared-tables.tsx';
+import { COMPARED_HEAD, type ComparedNames, FigureCells, OnlyIn } from './compared-tables.tsx';
 
 const COLUMNS: ReadonlyArray<{ what: FigureName; quantity: FigureBeside['quantity'] }> = [
   { what: 'elevation', quantity: 'elevation' },
@@ -24,16 +24,15 @@ interface ComparedPointsProps {
 /** The reading points of both nets, matched by name: where they lie, their heads and pressures. */
 export function ComparedPoints({ points, ...rest }: ComparedPointsProps) {
   const { units } = rest;
-  const head = 'border-b border-rule px-3.5 py-[5px] text-sm font-semibold text-ink-2';
   return (
     <Table caption={text.points}>
       <thead>
         <tr>
-          <th rowSpan={2} scope="col" className={`${head} align-bottom text-left`}>
+          <th rowSpan={2} scope="col" className={`${COMPARED_HEAD} text-left`}>
             {text.point}
           </th>
           {COLUMNS.map(({ what, quantity }) => (
-            <th key={what} scope="colgroup" colSpan={3} className={`${head} border-l text-left`}>
+            <th key={what} scope="colgroup" colSpan={3} className={`${COMPARED_HEAD} border-l text-left`}>
               {figureLabel(what, quantity, units)}
             </th>
           ))}
@@ -41,7 +40,7 @@ export function ComparedPoints({ points, ...rest }: ComparedPointsProps) {
         <tr>
           {COLUMNS.map(({ what }) =>
             [text.one, text.other, text.difference].map((word) => (
-              <th key={`${what} ${word}`} scope="col" className={`${head} text-right`}>
+              <th key={`${what} ${word}`} scope="col" className={`${COMPARED_HEAD} text-right`}>
                 {word}
               </th>
             )),
@@ -67,7 +66,10 @@ function PointRows({ group, units, names, unfinished }: PointRowsProps) {
   return (
     <>
       <tr>
-        <th scope="row" className="border-b border-rule-2 px-3.5 py-[5px] text-left font-semibold">
+        <th
+          scope="row"
+          className="min-w-28 border-b border-rule-2 px-3.5 py-[5px] text-left font-semibold max-sm:px-1.5"
+        >
           {group.name || figureWords.unnamed}
           <OnlyIn group={group} names={names} />
         </th>

@@ -16,7 +16,7 @@ import { BYTE_ORDER_MARK, csvText } from '#shared/text/csv.ts';
 import { cleanFileName } from '#shared/text/file-name.ts';
 import { compareCautions, haveSameDatum } from './compare-cautions.ts';
 import { ComparedChanges } from './compared-changes.tsx';
-import type { ComparedNet } from './compared-net.ts';
+import { type ComparedNet, namedApart } from './compared-net.ts';
 import { ComparedPicture } from './compared-picture.tsx';
 import { ComparedPoints } from './compared-points.tsx';
 import { ComparedTable } from './compared-tables.tsx';
@@ -28,7 +28,8 @@ interface ComparedProps {
 }
 
 /** What two nets say beside one another: cautions, picture, figures, and what was drawn or entered otherwise. */
-export function Compared({ damName, one, other }: ComparedProps) {
+export function Compared({ damName, ...given }: ComparedProps) {
+  const [one, other] = useMemo(() => namedApart(given.one, given.other), [given.one, given.other]);
   const [chosen, setChosen] = useState<UnitSystem | null>(null);
   const unitSystem = chosen ?? one.document.unitSystem;
   const groups = useMemo(() => besideIn(unitSystem, one, other), [unitSystem, one, other]);

@@ -249,7 +249,7 @@ describe('from a scan to a decision', () => {
     expect([cells[5], cells[8]]).toEqual([0, 0]);
     await reviewer.getByRole('application', { name: /^Sheet of .*revision A/ }).waitFor();
     await reviewer.getByLabel('Show', { exact: true }).selectOption('Side by side');
-    await reviewer.getByText(/Both views show the same part of the section/).waitFor();
+    await reviewer.getByText(/Both views show the same offsets and elevations/).waitFor();
     await reviewer.getByRole('application', { name: /^Sheet of .*revision B/ }).waitFor();
   });
 

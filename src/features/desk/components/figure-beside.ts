@@ -21,8 +21,8 @@ function valueRuns(value: number, style: FigureStyle): Run[] {
 }
 
 /**
- * The difference of two figures with its sign; of figures that are told by powers of ten the part of the first, since
- * their difference says nothing to the eye.
+ * The difference of two figures with its sign; of figures that are told by powers of ten the part of the first, or how
+ * many times the first the second is, since their difference says nothing to the eye.
  */
 export function differenceText(figure: FigureBeside, system: UnitSystem): string {
   const { difference, one, quantity, digits } = figure;
@@ -30,5 +30,7 @@ export function differenceText(figure: FigureBeside, system: UnitSystem): string
   const style = figureStyle(quantity, system, digits);
   if (style.form === 'fixed') return signedText(difference, style.decimals);
   if (style.form === 'plain') return `${difference > 0 ? '+' : ''}${plainText(difference, style.digits)}`;
-  return one.value ? `${signedText((100 * difference) / one.value, 1)} %` : NO_FIGURE;
+  if (!one.value) return NO_FIGURE;
+  const part = difference / one.value;
+  return part > 1 ? `× ${plainText(1 + part, style.digits)}` : `${signedText(100 * part, 1)} %`;
 }

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { paths } from '#client/lib/paths.ts';
 import { compareCautions, haveSameDatum } from '#client/pages/compare/compare-cautions.ts';
-import type { ComparedNet } from '#client/pages/compare/compared-net.ts';
+import { type ComparedNet, namedApart } from '#client/pages/compare/compared-net.ts';
 import { parseSide } from '#client/pages/compare/parse-side.ts';
 import { compareText } from '#client/text/compare.ts';
 import { readNet } from '#shared/compute/read-net.ts';
@@ -90,6 +90,20 @@ describe('what has to be known before two nets are compared', () => {
     expect(compareCautions(one, compared('b', { reading: { ...reading, points } }))).toEqual([
       text.sharedNames('P1'),
     ]);
+  });
+});
+
+describe('the names of both', () => {
+  const names = (change: Partial<ComparedNet>) =>
+    namedApart(one, compared('b', { name: one.name, ...change })).map(({ name }) => name);
+
+  it('are told apart by the section, else by their side', () => {
+    expect(names({ name: 'Flood level' })).toEqual(['Net a', 'Flood level']);
+    expect(names({ section: { ...one.section, id: 'c', name: 'C–C' } })).toEqual([
+      'Section B–B, Net a',
+      'Section C–C, Net a',
+    ]);
+    expect(names({})).toEqual(['First: Net a', 'Second: Net a']);
   });
 });
 
