@@ -23,7 +23,7 @@ export function CheckListRow({ number, item, error, onChange, onUp, onRemove }: 
           rows={2}
           aria-label={text.item(number)}
           aria-invalid={error ? true : undefined}
-          className={`${inputClass(error !== null)} field-sizing-content min-h-0 resize-y`}
+          className={`${inputClass(error !== null)} block field-sizing-content min-h-0 resize-y`}
           maxLength={MAX_CHECK_ITEM_LENGTH}
           value={item.text}
           onChange={(event) => onChange(event.target.value)}

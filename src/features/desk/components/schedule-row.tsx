@@ -14,7 +14,7 @@ import { TableNumber, TableText } from './table-inputs.tsx';
 
 const LONGEST_NAME = 120;
 const CELL = 'border-b border-rule-2 px-2 py-[3px]';
-const FIGURE = `${CELL} text-right`;
+const FIGURE = `${CELL} text-right whitespace-nowrap`;
 
 export type FigureMark = (pointId: string, column: HideableColumn) => ReactNode;
 
@@ -244,7 +244,7 @@ function FigureCells({
         <HeadCells figures={figures} columns={columns} markOf={(column) => markOf?.(point.id, column)} />
       )}
       {withPressure ? (
-        <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+        <td className={FIGURE}>
           {markOf?.(point.id, 'porePressure')}
           <b className="font-semibold">{figures.porePressure}</b>
           {above ? null : <span className="text-ink-2">{figures.porePressurePlusMinus}</span>}
@@ -283,7 +283,7 @@ function HeadCells({
         </td>
       ) : null}
       {columns.includes('totalHead') ? (
-        <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+        <td className={FIGURE}>
           {markOf('totalHead')}
           {figures.totalHead}
           <span className="text-ink-2">{figures.totalHeadPlusMinus}</span>
@@ -316,13 +316,13 @@ function MeasuredCells({
   return (
     <>
       {shows('measured') ? (
-        <td className={classNames(FIGURE, 'whitespace-nowrap')}>
+        <td className={FIGURE}>
           {figures.head}
           <span className="text-ink-2">{figures.headPlusMinus}</span>
         </td>
       ) : null}
       {shows('difference') ? (
-        <td className={classNames(FIGURE, 'whitespace-nowrap', MEASURED_COLOURS[state])}>
+        <td className={classNames(FIGURE, MEASURED_COLOURS[state])}>
           {state === 'wet' ? measuredText.wetShort : figures.difference}
           <span className="font-normal text-ink-2">{figures.differencePlusMinus}</span>
         </td>

@@ -26,7 +26,7 @@ export function FiguresChecked() {
           <h3 className="mt-2 mb-0.5 text-sm font-semibold">{text.further}</h3>
           <ul className="m-0 list-none p-0">
             {further.map(({ key, of, what, value }) => (
-              <li key={key} className="flex items-baseline gap-1 border-b border-rule-2 py-1">
+              <li key={key} className="flex items-center gap-1 border-b border-rule-2 py-1">
                 <TickBox figureKey={key} />
                 <span className="min-w-0 flex-1 break-words">
                   {sentenceText(of)}, {what}
