@@ -100,7 +100,7 @@ function blindTable(rows: readonly BlindRow[], { unitSystem, datum }: FlowNetDoc
       right(`u, ${pressure}: own / net`, 2),
       right('Δu', 1),
       right('± of u', 1),
-      { label: 'Within ±', align: 'left', weight: 1.2 },
+      { label: 'u within ±', align: 'left', weight: 1.2 },
       { label: 'Remark', align: 'left', weight: 2 },
     ],
     rows: rows.map((row) => [

@@ -48,12 +48,21 @@ function Counts({ check: { figures, checkList } }: { check: FrozenCheck }) {
 function NotTicked({ check: { figures } }: { check: FrozenCheck }) {
   const rest = figures.filter(({ ticked }) => !ticked);
   if (rest.length === 0) return <p className="m-0">{text.allTicked}</p>;
+  const parts = [...new Set(rest.map(({ of }) => of))];
   return (
     <>
       <h3 className="mt-1 mb-0 text-sm font-semibold">{text.notTicked}</h3>
-      <p className="m-0 break-words">
-        {rest.map(({ of, what }) => sentenceText(`${of}, ${what}`)).join('; ')}
-      </p>
+      <ul className="m-0 list-none p-0">
+        {parts.map((part) => (
+          <li key={part} className="break-words">
+            {sentenceText(part)}:{' '}
+            {rest
+              .filter(({ of }) => of === part)
+              .map(({ what }) => what)
+              .join(', ')}
+          </li>
+        ))}
+      </ul>
     </>
   );
 }
