@@ -81,7 +81,9 @@ export function hiddenWords(page: Page): Promise<string[]> {
         !element.checkVisibility({ visibilityProperty: true, opacityProperty: true })
       )
         continue;
-      if (element.closest('.sr-only, script, style, option, [data-live-help]')) continue;
+      if (element.closest('.sr-only, script, style, option, svg, [data-live-help]')) continue;
+      // What lets presses through is not met by asking what lies at a place.
+      if (getComputedStyle(element).pointerEvents === 'none') continue;
       const dialog = [...document.querySelectorAll('dialog[open]')].at(-1);
       if (dialog && !dialog.contains(element)) continue;
       const range = document.createRange();
@@ -99,6 +101,7 @@ export function hiddenWords(page: Page): Promise<string[]> {
         const over = document.elementFromPoint(x, y);
         const isOwn =
           over === null ||
+          !over.checkVisibility({ opacityProperty: true }) ||
           over.contains(element) ||
           element.contains(over) ||
           over.closest('label')?.contains(element);
@@ -120,7 +123,7 @@ export async function focusFaults(page: Page, state: string): Promise<string[]> 
     const faults: string[] = [];
     const root = [...document.querySelectorAll('dialog[open]')].at(-1) ?? document.body;
     const takers = root.querySelectorAll<HTMLElement>(
-      'a[href], button:not(:disabled), input:not(:disabled), select:not(:disabled), textarea:not(:disabled), [tabindex="0"]',
+      'a[href]:not([tabindex="-1"]), button:not(:disabled), input:not(:disabled), select:not(:disabled), textarea:not(:disabled), [tabindex="0"]',
     );
     for (const each of takers) {
       if (!each.isConnected || !each.checkVisibility({ visibilityProperty: true })) continue;

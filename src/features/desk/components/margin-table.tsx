@@ -18,15 +18,20 @@ export function MarginTable({
         <caption className="sr-only">{caption}</caption>
         <thead>
           <tr>
-            {heads.map((head, i) => (
-              <th
-                key={head}
-                scope="col"
-                className={`border-b border-rule px-1.5 py-[3px] align-bottom font-semibold text-ink-2 ${i === 0 ? 'text-left' : 'text-right'}`}
-              >
-                {head}
-              </th>
-            ))}
+            {heads.map((head, i) =>
+              // A column without a head holds words that need none; an empty head would be read out.
+              head === '' ? (
+                <td key={head} className="border-b border-rule" />
+              ) : (
+                <th
+                  key={head}
+                  scope="col"
+                  className={`border-b border-rule px-1.5 py-[3px] align-bottom font-semibold text-ink-2 ${i === 0 ? 'text-left' : 'text-right'}`}
+                >
+                  {head}
+                </th>
+              ),
+            )}
           </tr>
         </thead>
         <tbody>{children}</tbody>

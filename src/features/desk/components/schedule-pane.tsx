@@ -121,7 +121,8 @@ export function SchedulePane({
         </span>
       </div>
       <ScheduleState reading={reading} failed={readingFailed} />
-      <div className="min-h-0 flex-1 overflow-auto">
+      {/* Where large letters leave it no room below the heads, the pane around it scrolls. */}
+      <div className="min-h-24 flex-1 overflow-auto">
         {reading && points.length > 0 ? (
           <div className={stale ? 'opacity-60' : ''}>
             <Schedule

@@ -73,7 +73,7 @@ export function SheetAids({ store, noteCount }: { store: DeskStore; noteCount: n
           tabIndex={-1}
           data-over-sheet
           aria-label={text[open]}
-          className="absolute top-full right-0 z-10 mt-2 max-h-[min(56dvh,27rem)] w-[min(20rem,100%)] touch-pan-y overflow-y-auto rounded-sheet border border-ink bg-film px-3 py-2.5"
+          className="absolute top-full right-0 z-10 mt-2 max-h-[min(56dvh,27rem,100cqh-6rem)] w-[min(20rem,100%)] touch-pan-y overflow-y-auto rounded-sheet border border-ink bg-film px-3 py-2.5"
           onKeyDown={(event) => {
             if (event.key !== 'Escape') return;
             event.stopPropagation();

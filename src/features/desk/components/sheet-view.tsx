@@ -132,7 +132,8 @@ export function SheetView({
       tabIndex={controller === null ? -1 : 0}
       data-panning={panning || undefined}
       className={classNames(
-        '@container relative touch-none select-none overflow-hidden bg-desk focus-visible:outline-offset-[-3px]',
+        // Panels over the sheet are never higher than it.
+        '[container-type:size] relative touch-none select-none overflow-hidden bg-desk focus-visible:outline-offset-[-3px]',
         panning ? 'cursor-grabbing' : cursorFor(tool),
         className,
       )}

@@ -97,8 +97,17 @@ function Cell({ cell, open, onStep }: { cell: TitleCell; open: boolean; onStep: 
   );
 }
 
+/** The sign is small, what is pressed is 24 px high and wide. */
 const SIGN =
-  'pointer-events-auto min-h-0 rounded-full border border-ink bg-film px-1.5 text-[11px] leading-[16px] hover:bg-hover';
+  'group/sign pointer-events-auto flex min-h-6 min-w-6 items-start justify-end border-0 bg-transparent p-0';
+
+function Sign({ children }: { children: ReactNode }) {
+  return (
+    <span className="rounded-full border border-ink bg-film px-1.5 text-[11px] leading-[16px] group-hover/sign:bg-hover">
+      {children}
+    </span>
+  );
+}
 
 /** In a cell's corner the balloons of its open notes, and the way to begin one while the cell is pointed at. */
 function CellNotes({ cell, notes }: { cell: TitleCell; notes: CellNotesOf }) {
@@ -114,7 +123,7 @@ function CellNotes({ cell, notes }: { cell: TitleCell; notes: CellNotesOf }) {
           title={notesText.noteOn(note.number, notesText.cells[cell.id])}
           onClick={() => notes.onOpen(note.id)}
         >
-          {note.number}
+          <Sign>{note.number}</Sign>
         </button>
       ))}
       {onNote ? (
@@ -128,7 +137,7 @@ function CellNotes({ cell, notes }: { cell: TitleCell; notes: CellNotesOf }) {
           title={notesText.onCell(notesText.cells[cell.id])}
           onClick={() => onNote(cell.id)}
         >
-          {notesText.noteSign}
+          <Sign>{notesText.noteSign}</Sign>
         </button>
       ) : null}
     </div>
