@@ -36,12 +36,14 @@ export function IndependentCheck({ payload, store, checks, views, onSheet }: Ind
   return (
     <section aria-label={independentText.title} className="h-full overflow-auto bg-film">
       <div className="flex flex-col gap-2 px-2.5 py-2">
-        {views}
+        <div className="flex flex-wrap items-start gap-x-3 gap-y-1">
+          <div className="mr-auto py-1">{views}</div>
+          <SolveControl state={independent} again={result !== null} checks={checks} onPlace={lookAt} />
+        </div>
         <Aside>
           {runAgainText.independent.notRecord(payload.label, payload.engineVersion, ENGINE_VERSION)}{' '}
-          {independentText.lead}
+          {result ? '' : independentText.lead}
         </Aside>
-        <SolveControl state={independent} again={result !== null} checks={checks} onPlace={lookAt} />
         {result ? <Result beside={result.beside} payload={payload} checks={checks} onPlace={lookAt} /> : null}
       </div>
     </section>
@@ -81,6 +83,7 @@ function Result({ beside, payload: { document, reading }, checks, onPlace }: Res
             </MarginSection>
           ) : null}
           <SolutionQuality beside={beside} document={document} />
+          <Aside>{independentText.lead}</Aside>
         </div>
       </div>
     </div>

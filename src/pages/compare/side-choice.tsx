@@ -54,7 +54,11 @@ export function SideChoice({ title, drawings, side, loaded, onChoose }: SideChoi
           ))}
         </SelectField>
       </div>
-      <ProblemNote error={loaded.error} />
+      {loaded.error ? (
+        <div className="px-3.5 pb-3">
+          <ProblemNote error={loaded.error} />
+        </div>
+      ) : null}
       {loaded.unread ? <SideFacts loaded={loaded} /> : null}
     </Panel>
   );
