@@ -145,16 +145,19 @@ const ROWS = `
       CASE
         WHEN w.job IN ('waiting', 'running') THEN ARRAY['preparing']
         WHEN w.job IN ('refused', 'failed') THEN ARRAY['unusable']
-        ELSE coalesce((SELECT array_agg(DISTINCT n.state) FROM n
-          WHERE n.drawing_id = w.id AND n.archived_at IS NULL AND NOT n.section_archived), ARRAY['bare'])
+        ELSE coalesce(has.states, ARRAY['bare'])
       END,
       w.archived_at IS NOT NULL, w.uploaded_at, w.dam_key, w.key, search_words(w.said)
-    FROM w
+    FROM w LEFT JOIN (
+      SELECT n.drawing_id, array_agg(DISTINCT n.state) AS states FROM n
+      WHERE n.archived_at IS NULL AND NOT n.section_archived GROUP BY n.drawing_id
+    ) has ON has.drawing_id = w.id
     UNION ALL SELECT c.id, 'section', c.dam_id, c.drawing_id, c.id, c.sheet_id, c.created_by, ARRAY[c.created_by],
-      coalesce((SELECT array_agg(DISTINCT n.state) FROM n WHERE n.section_id = c.id AND n.archived_at IS NULL),
-        ARRAY['bare']),
+      coalesce(has.states, ARRAY['bare']),
       c.under_archived OR c.archived_at IS NOT NULL, c.created_at, c.dam_key, c.key, search_words(c.said)
-    FROM c
+    FROM c LEFT JOIN (
+      SELECT n.section_id, array_agg(DISTINCT n.state) AS states FROM n WHERE n.archived_at IS NULL GROUP BY n.section_id
+    ) has ON has.section_id = c.id
     UNION ALL SELECT n.id, 'net', n.dam_id, n.drawing_id, n.section_id, n.sheet_id, n.created_by, people_of_net(n.id),
       ARRAY[n.state], n.under_archived OR n.archived_at IS NOT NULL, n.updated_at, n.dam_key, n.key,
       search_words(concat_ws(' ', n.said, n.name, note_words(n.id)))
