@@ -38,7 +38,12 @@ const drawing = (name: string, number: string, bring: (page: Page) => Promise<vo
   },
 });
 
-const onDesk = (name: string, bring: (page: Page) => Promise<void>): Screen => ({
+const onDesk = (
+  name: string,
+  bring: (page: Page) => Promise<void>,
+  more: Pick<Screen, 'covers'> = {},
+): Screen => ({
+  ...more,
   name: `desk, ${name}`,
   path: NET,
   async open(page) {
@@ -89,6 +94,7 @@ export const STATES: readonly Screen[] = [
   {
     name: 'account menu',
     path: DAM,
+    covers: true,
     async open(page) {
       await page.getByRole('button', { name: /Iris Marsh/ }).click();
       await page.getByRole('button', { name: 'Sign out' }).waitFor();
@@ -106,11 +112,15 @@ export const STATES: readonly Screen[] = [
   }),
   onDesk('new note on the drawing', (page) => press(page, 'Note on the drawing')),
   onDesk('schedule with a row open', (page) => press(page, /^How counted/)),
-  onDesk('columns of the schedule', async (page) => {
-    await press(page, 'Columns');
-    await page.getByRole('dialog').waitFor();
-  }),
-  onDesk('downloads', (page) => press(page, 'Download')),
+  onDesk(
+    'columns of the schedule',
+    async (page) => {
+      await press(page, 'Columns');
+      await page.getByRole('dialog').waitFor();
+    },
+    { covers: true },
+  ),
+  onDesk('downloads', (page) => press(page, 'Download'), { covers: true }),
   onDesk('print or save', async (page) => {
     await press(page, 'Print or save');
     await page.getByRole('dialog').waitFor();

@@ -7,6 +7,10 @@ import { apron, fullSupply } from '#server/demo/seed-demo.ts';
 export interface Screen {
   readonly name: string;
   readonly path: string;
+  /** Comes from the screen before it, which has the same address, without loading the page again. */
+  readonly goesOn?: true;
+  /** Shows something that covers a part of the rest, as an open menu does. */
+  readonly covers?: true;
   /** Waits until the screen is there, and brings it into the state. */
   open(page: Page): Promise<void>;
 }
@@ -24,7 +28,7 @@ const pressed = (name: string | RegExp) => async (page: Page) => {
 async function desk(page: Page): Promise<void> {
   await page.getByRole('application', { name: / on drawing / }).waitFor();
   await page
-    .getByText(/^(Saved|Looking only)/)
+    .getByText(/^(Saved|You can read this net)/)
     .first()
     .waitFor();
 }
@@ -107,8 +111,8 @@ export const SCREENS_OF: ReadonlyArray<{ readonly person: string; readonly scree
       ...cells.map((cell) => ({
         name: `desk, ${cell}`,
         path: `/nets/${fullSupply}`,
+        goesOn: true as const,
         async open(page: Page) {
-          await desk(page);
           const block = page.getByRole('region', { name: 'Title block' });
           await block.getByRole('button', { name: new RegExp(`^${cell}`) }).click();
           await page.getByRole('complementary').getByRole('heading').first().waitFor();
@@ -215,6 +219,7 @@ export const SCREENS_OF: ReadonlyArray<{ readonly person: string; readonly scree
       { name: 'no dams', path: '/', open: heading('Your dams') },
       { name: 'people', path: '/people', open: heading(/./) },
       { name: 'mails', path: '/mails', open: heading(/./) },
+      { name: 'mail templates', path: '/mails/templates', open: heading('Mail templates') },
       {
         name: 'mail',
         path: '/mails',
@@ -235,4 +240,3 @@ export async function signInToDemo(page: Page, email: string): Promise<void> {
   await page.getByRole('button', { name: 'Sign in', exact: true }).click();
   await page.getByRole('heading', { name: 'Your dams' }).waitFor();
 }
-      { name: 'mail templates', path: '/mails/templates', open: heading('Mail templates') },
