@@ -6,6 +6,7 @@ import { firstLoad } from './first-load.ts';
 import { firstView } from './first-view-bench.ts';
 import { independentSolution } from './independent-bench.ts';
 import { inkFollow } from './ink-follow.ts';
+import { mailLatency } from './mail-latency.ts';
 import { noteLatency } from './note-latency.ts';
 import { pageMemory } from './page-memory.ts';
 import { panFrame } from './pan-frame.ts';
@@ -33,6 +34,8 @@ const benches: readonly Bench[] = [
   scheduleApi,
   noteLatency,
   independentSolution,
+  register,
+  mailLatency,
   reread200,
   wholeNet60,
   fieldSolve,
