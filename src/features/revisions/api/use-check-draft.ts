@@ -1,5 +1,5 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useCallback } from 'react';
+import { useCallback, useState } from 'react';
 import type * as z from 'zod/mini';
 import { sendJson } from '#client/lib/http.ts';
 import { type CheckDraft, checkDraftDto, type checkDraftPatch } from '#shared/contract/review.ts';
@@ -8,9 +8,16 @@ import { revisionKeys } from './revision-queries.ts';
 
 export type DraftChange = z.input<typeof checkDraftPatch>;
 
-/** Ticks and answers of the reader: shown at once, sent one after another, shown as the server has them if that fails. */
-export function useCheckDraft(revisionId: string) {
+/**
+ * Ticks and answers of the reader, null for who does not check: shown at once, sent one after another, shown as the server
+ * has them if that fails.
+ */
+export function useCheckDraft({ summary, checking }: RevisionDto) {
+  const revisionId = summary.id;
   const queryClient = useQueryClient();
+  // The query tells of a change only later, by when the browser has put a box back as it was.
+  const [shown, setShown] = useState({ of: checking, draft: checking?.draft ?? null });
+  if (shown.of !== checking) setShown({ of: checking, draft: checking?.draft ?? null });
   const { mutate, error } = useMutation({
     scope: { id: `check-draft ${revisionId}` },
     mutationFn: (body: DraftChange) =>
@@ -22,12 +29,13 @@ export function useCheckDraft(revisionId: string) {
       const queryKey = revisionKeys.detail(revisionId);
       // An answer under way to an earlier question must not take the tick back.
       void queryClient.cancelQueries({ queryKey });
+      setShown(({ of, draft }) => ({ of, draft: draft && changedDraft(draft, body) }));
       queryClient.setQueryData<RevisionDto>(queryKey, (held) => withChange(held, body));
       mutate(body);
     },
     [queryClient, revisionId, mutate],
   );
-  return { change, error };
+  return { draft: shown.draft, change, error };
 }
 
 function withChange(held: RevisionDto | undefined, body: DraftChange): RevisionDto | undefined {

@@ -20,7 +20,7 @@ export function gapsOf(items: readonly CheckListItem[], answers: readonly CheckL
 export function CheckList() {
   const work = useCheckWork();
   if (work === null) return null;
-  const { checkList: items, draft } = work.checking;
+  const { checkList: items, draft } = work;
   const { answers } = draft;
   const onAnswer = (answer: CheckListAnswer) => work.change({ answers: [answer] });
   const { unanswered } = gapsOf(items, answers);
