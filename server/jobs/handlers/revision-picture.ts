@@ -25,7 +25,7 @@ export async function revisionPicture(
     const { payload } = await openRevision(db.manager, revisionId);
     const whole = sectionFigure(payload.document, payload.reading);
     if (whole === null) return null;
-    const figure = payload.blindFirst ? withoutHeads(whole) : whole;
+    const figure = payload.blindFirst ? linesAlone(whole) : whole;
     const sheet = await db.manager.findOneByOrFail(SheetEntity, { id: payload.sheet.id });
     const wanted = { crop: figure.crop, wantedPx: scanWidth(figure.crop) };
     const scan = await scanRaster(storage, sheet, wanted, AbortSignal.timeout(MOST_MS));
@@ -36,9 +36,11 @@ export async function revisionPicture(
   }
 }
 
-/** Who is to read the net alone first gets no figures by mail. */
-const withoutHeads = (figure: SectionFigure): SectionFigure => ({
+/** Who is to read the net alone first gets neither figures by mail nor where the points lie. */
+const linesAlone = (figure: SectionFigure): SectionFigure => ({
   ...figure,
+  points: [],
+  profiles: [],
   lines: figure.lines.map((line) => ({ ...line, label: '' })),
 });
 

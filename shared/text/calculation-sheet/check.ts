@@ -54,8 +54,8 @@ export function blindKnowledge({ placesShownAt, figuresMailed }: BlindReading): 
       ? 'The points were placed by the reviewer without seeing where the engineer has them.'
       : 'The reviewer was shown where the points lie, without figures.',
     figuresMailed
-      ? 'The mail about the revision told the main figures.'
-      : 'The mail about the revision told no figures.',
+      ? 'The mail about the revision told the main figures and showed where the points lie.'
+      : 'The mail about the revision told neither figures nor places.',
     'The figures were kept back from when it was sent; what was seen of the net before is not known.',
   ];
 }
