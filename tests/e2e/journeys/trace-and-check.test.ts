@@ -239,6 +239,7 @@ describe('from a scan to a decision', () => {
 
   it('the two revisions stand beside one another, by figures and over the same sheet', async () => {
     await reviewer.getByRole('link', { name: /^Compare: revision A/ }).click();
+    await reviewer.getByRole('heading', { name: 'Compare nets', level: 1 }).waitFor();
     const points = reviewer.getByRole('region', { name: 'Reading points' });
     const row = points.getByRole('row').filter({ hasText: 'P2' });
     await row.waitFor();
