@@ -12,6 +12,7 @@ import { pageMemory } from './page-memory.ts';
 import { panFrame } from './pan-frame.ts';
 import { dragVertex, panFrameE600 } from './pan-frame-e600.ts';
 import { fieldSolve, readingError, reread200, wholeNet60 } from './reading-bench.ts';
+import { register } from './register-bench.ts';
 import { renderMemory } from './render-memory.ts';
 import { scheduleApi } from './schedule-api.ts';
 import { sheetPdf } from './sheet-pdf.ts';
@@ -33,9 +34,9 @@ const benches: readonly Bench[] = [
   firstLoad,
   scheduleApi,
   noteLatency,
-  independentSolution,
   register,
   mailLatency,
+  independentSolution,
   reread200,
   wholeNet60,
   fieldSolve,

@@ -12,17 +12,17 @@ interface FoundRow {
 }
 
 /**
- * For each of the nets the note in which the search was found, as far as its names alone are not what was found: an
+ * For each of the nets among the ids the note in which the search was found, as far as its names alone are not what was found: an
  * entry with all the words, else the newest one with any of them. Notes tell figures: whoever may still read a net blind
  * is shown none of its notes.
  */
 export async function foundNotes(
   manager: EntityManager,
-  netIds: readonly string[],
+  ids: readonly string[],
   search: string,
   readerId: string,
 ): Promise<Map<string, NonNullable<RegisterRow['found']>>> {
-  if (search === '' || netIds.length === 0) return new Map();
+  if (search === '' || ids.length === 0) return new Map();
   const rows: FoundRow[] = await manager.query(
     `WITH asked AS (
         SELECT search_query($2) AS all_words, replace(search_query($2)::text, ' & ', ' | ')::tsquery AS any_word
@@ -40,7 +40,7 @@ export async function foundNotes(
       WHERE n.id = ANY ($1::uuid[]) AND NOT search_words(concat_ws(' ', d.name, w.number, number_in_one(w.number),
         w.revision, w.title, w.drawn_on, w.source, w.file_name, c.name, c.chainage, n.name)) @@ all_words
         AND NOT EXISTS (SELECT 1 FROM revision r WHERE r.net_id = n.id AND figures_kept_back(r.id, $3))`,
-    [netIds, search, readerId],
+    [ids, search, readerId],
   );
   return new Map(
     rows.map(({ net_id, number, text }) => [net_id, { noteNumber: number, parts: foundParts(text, search) }]),

@@ -46,39 +46,48 @@ function conditionOf(query: RegisterQuery, seen: SeenDams, actor: Actor): Condit
   return { sql: parts.join(' AND '), values };
 }
 
-/** A page of the drawings, sections and nets that the reader may see and asks for. */
+/**
+ * A page of the drawings, sections and nets that the reader may see and asks for. Questions that do not wait for one
+ * another are asked at once, so that a page takes three turns to the database; `manager` is therefore no transaction's.
+ */
 export async function listRegister(
   manager: EntityManager,
   actor: Actor,
   query: RegisterQuery,
 ): Promise<RegisterPage> {
   const condition = conditionOf(query, await seenDams(manager, actor, query.dam), actor);
-  const sort = query.sort ?? 'number';
-  const { columns, written, casts, direction } = SORT_ORDERS[sort];
-  const position = query.cursor === undefined ? [] : fromRegisterCursor(sort, query.cursor);
+  const [rows, total] = await Promise.all([
+    rowsAfter(manager, condition, query),
+    query.cursor === undefined ? countOf(manager, condition) : null,
+  ]);
+  const shown = rows.slice(0, PAGE_SIZE);
+  const last = rows.length > PAGE_SIZE ? shown.at(-1) : undefined;
+  const ids = shown.map(({ id }) => id);
+  return {
+    items: await presentRegister(manager, ids, actor, query.q ?? ''),
+    nextCursor: last ? toRegisterCursor(sortOf(query), last.position) : null,
+    total,
+  };
+}
+
+const sortOf = ({ sort = 'number' }: RegisterQuery) => sort;
+
+/** Ids in the order asked for, one more than a page holds, each with the position a page could end at. */
+function rowsAfter(
+  manager: EntityManager,
+  condition: Condition,
+  query: RegisterQuery,
+): Promise<Array<{ id: string; position: string[] }>> {
+  const { columns, written, casts, direction } = SORT_ORDERS[sortOf(query)];
+  const position = query.cursor === undefined ? [] : fromRegisterCursor(sortOf(query), query.cursor);
   const places = position.map((_, n) => `$${condition.values.length + n + 1}::${casts[n]}`);
-  const after =
-    position.length === 0
-      ? ''
-      : `AND (${columns.join(', ')}) ${direction === 'ASC' ? '>' : '<'} (${places.join(', ')})`;
-  const rows: Array<{ id: string; position: string[] }> = await manager.query(
+  const isAfter = `(${columns.join(', ')}) ${direction === 'ASC' ? '>' : '<'} (${places.join(', ')})`;
+  return manager.query(
     `SELECT e.id, ARRAY[${written.join(', ')}] AS position FROM register_entry e
-      WHERE ${condition.sql} ${after}
+      WHERE ${condition.sql} ${position.length > 0 ? `AND ${isAfter}` : ''}
       ORDER BY ${columns.map((column) => `${column} ${direction}`).join(', ')} LIMIT ${PAGE_SIZE + 1}`,
     [...condition.values, ...position],
   );
-  const shown = rows.slice(0, PAGE_SIZE);
-  const last = rows.length > PAGE_SIZE ? shown.at(-1) : undefined;
-  return {
-    items: await presentRegister(
-      manager,
-      shown.map(({ id }) => id),
-      actor,
-      query.q ?? '',
-    ),
-    nextCursor: last ? toRegisterCursor(sort, last.position) : null,
-    total: query.cursor === undefined ? await countOf(manager, condition) : null,
-  };
 }
 
 /** Counts no further than is told, so that a count of everything costs no more than a page. */

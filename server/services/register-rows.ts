@@ -54,10 +54,11 @@ export async function presentRegister(
   search: string,
 ): Promise<RegisterRow[]> {
   if (ids.length === 0) return [];
-  const rows: EntryRow[] = await manager.query(ENTRIES, [ids]);
-  const notes = await noteCounts(manager, ids, actor);
-  const netIds = rows.filter(({ kind }) => kind === 'net').map(({ id }) => id);
-  const found = await foundNotes(manager, netIds, search, actor.id);
+  const [rows, notes, found] = await Promise.all([
+    manager.query<EntryRow[]>(ENTRIES, [ids]),
+    noteCounts(manager, ids, actor),
+    foundNotes(manager, ids, search, actor.id),
+  ]);
   return rows.map((row) => ({
     ...toRow(row),
     openNotes: notes.get(row.id)?.open ?? 0,
