@@ -1,3 +1,4 @@
+import { lazy, Suspense } from 'react';
 import { Link, useSearchParams } from 'react-router-dom';
 import { ButtonLink } from '#client/components/button.tsx';
 import { Page } from '#client/components/page.tsx';
@@ -11,6 +12,9 @@ import { damsText as text } from '#client/text/dams.ts';
 import { registerLinkText as registerText } from '#client/text/register-links.ts';
 import { waitingText } from '#client/text/waiting.ts';
 import { AppFrame } from '../app-frame.tsx';
+
+/** After the first load, of which it is no part. */
+const DamsLive = lazy(async () => ({ default: (await import('./dams-live.tsx')).DamsLive }));
 
 export function DamsPage() {
   const session = useSession();
@@ -28,6 +32,9 @@ export function DamsPage() {
           </ButtonLink>
         }
       >
+        <Suspense>
+          <DamsLive />
+        </Suspense>
         <div className="flex flex-col gap-6">
           <Panel title={waitingText.title} look="register">
             <Part>
