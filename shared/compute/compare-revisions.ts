@@ -66,10 +66,13 @@ function lineChanges(before: FrozenNet, after: FrozenNet): LineChange[] {
     if (movedPx !== null && movedPx <= STILL_PX && facts.length === 0) return [];
     const { line, name } = shown;
     const moved = inLength(movedPx, after.reading);
+    const drops = line === 'equipotential' ? dropsAt(is ? after.reading : before.reading, id) : null;
     const courses = { before: was?.points ?? [], after: is?.points ?? [] };
-    return [{ id, change: changeOf(was, is), line, name, movedPx, moved, facts, ...courses }];
+    return [{ id, change: changeOf(was, is), line, name, drops, movedPx, moved, facts, ...courses }];
   });
 }
+
+const dropsAt = ({ lines }: NetReading, id: string) => lines.find((line) => line.id === id)?.drops ?? null;
 
 const lineFacts = ({ line, name, finished, water, head, drops }: EntityOf<'line'>) => ({
   Kind: line,

@@ -19,6 +19,8 @@ export const lineChange = z.object({
   change,
   line: lineKind,
   name: z.string(),
+  /** Drops lost at an equipotential as counted where it is shown, to tell those without a name apart; null for others. */
+  drops: z.nullable(z.number()),
   /** Greatest distance between both courses, pixels of the sheet; null for a line that only one of both has. */
   movedPx: z.nullable(z.number()),
   /** The same in the length unit, by the later set-out; null where that has one scale no more or none. */

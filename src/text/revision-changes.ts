@@ -6,6 +6,7 @@ const en = {
   drawOver: (label: string) => `Draw the changed lines of revision ${label} over the sheet`,
   unnamed: 'unnamed',
   change: { added: 'added', removed: 'removed', changed: 'changed' },
+  atDrops: (drops: string) => `at ${drops} ${drops === '1' ? 'drop' : 'drops'}`,
   moved: (distance: string, unit: string) => `moved by up to ${distance} ${unit}`,
   movedPx: (distance: string) => `moved by up to ${distance} px`,
   lines: {

@@ -19,6 +19,7 @@ export function alignedWith(one: FrozenNet, other: FrozenNet): FrozenNet {
     document: { ...other.document, entities: Object.fromEntries(entities) },
     reading: {
       ...other.reading,
+      lines: other.reading.lines.map((line) => ({ ...line, id: idOf(line.id) })),
       points: other.reading.points.map((point) => ({ ...point, id: idOf(point.id) })),
     },
   };

@@ -3,7 +3,7 @@ import type { RevisionComparison } from '#shared/contract/revision-comparison.ts
 import { changesText } from '#shared/text/changes-text.ts';
 
 const NOTHING: RevisionComparison = { lines: [], points: [], inputs: [], quantities: [], figures: [] };
-const line = { id: '1', line: 'equipotential' as const, name: '', movedPx: 5, moved: 1, facts: [] };
+const line = { id: '1', line: 'equipotential' as const, name: '', drops: 3, movedPx: 5, moved: 1, facts: [] };
 const pair = (before: number, after: number) => ({ before, after, difference: after - before });
 
 it('a revision that changed nothing says so', () => {

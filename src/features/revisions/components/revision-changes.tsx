@@ -1,5 +1,5 @@
 import { useId } from 'react';
-import { fixedText, sentenceText, signedText } from '#client/lib/figures.ts';
+import { fixedText, plainText, sentenceText, signedText } from '#client/lib/figures.ts';
 import { changesWords as text } from '#client/text/revision-changes.ts';
 import type { UnitSystem } from '#shared/contract/document.ts';
 import type { RevisionComparison } from '#shared/contract/revision-comparison.ts';
@@ -68,9 +68,9 @@ function LineChanges({ comparison, unitSystem }: ChangedThingsProps) {
   const { length } = unitNames(unitSystem);
   return (
     <ul className="m-0 list-disc pl-5">
-      {comparison.lines.map(({ id, line, name, change, movedPx, moved }) => (
+      {comparison.lines.map(({ id, line, name, drops, change, movedPx, moved }) => (
         <li key={id}>
-          {text.lines[line]} {name}{' '}
+          {text.lines[line]} {name || (drops === null ? '' : text.atDrops(plainText(drops)))}{' '}
           {change !== 'changed' || movedPx === null
             ? text.change[change]
             : moved === null

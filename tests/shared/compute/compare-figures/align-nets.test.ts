@@ -47,6 +47,8 @@ describe('a net that was copied', () => {
     const { lines } = compareRevisions(one, alignedWith(one, moved));
     const shifted = lines.filter(({ movedPx }) => (movedPx ?? 0) > 0.05);
     expect(shifted).toHaveLength(1);
+    // The fourth equipotential from the headwater.
+    expect(shifted[0]!.drops).toBe(4);
     expect(shifted[0]!.movedPx!).toBeLessThanOrEqual(2 + 1e-9);
     expect(lines.every(({ change }) => change === 'changed')).toBe(true);
   });
