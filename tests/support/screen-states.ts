@@ -139,17 +139,23 @@ export const STATES: readonly Screen[] = [
 
 /** Parts of the desk on a telephone, by the buttons that bring them to the front. */
 export const PHONE_STATES: readonly Screen[] = [
-  ...['Sheet', 'Schedule', 'Notes', 'Title block'].map((pane) =>
-    onDesk(`${pane.toLowerCase()} on a telephone`, (page) =>
-      page.getByRole('button', { name: pane, exact: true }).click(),
+  ...['Sheet', 'Schedule', 'Notes', 'Title block'].map((pane, i) =>
+    onDesk(
+      `${pane.toLowerCase()} on a telephone`,
+      (page) => page.getByRole('button', { name: pane, exact: true }).click(),
+      i === 0 ? {} : { goesOn: true },
     ),
   ),
-  onDesk('a form on a telephone', async (page) => {
-    await page.getByRole('button', { name: 'Title block', exact: true }).click();
-    await page
-      .getByRole('region', { name: 'Title block' })
-      .getByRole('button', { name: /^Headwater/ })
-      .click();
-    await page.getByRole('button', { name: 'Form', exact: true }).waitFor();
-  }),
+  onDesk(
+    'a form on a telephone',
+    async (page) => {
+      await page.getByRole('button', { name: 'Title block', exact: true }).click();
+      await page
+        .getByRole('region', { name: 'Title block' })
+        .getByRole('button', { name: /^Headwater/ })
+        .click();
+      await page.getByRole('button', { name: 'Form', exact: true }).waitFor();
+    },
+    { goesOn: true },
+  ),
 ];
