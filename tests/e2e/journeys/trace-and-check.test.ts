@@ -263,12 +263,13 @@ describe('from a scan to a decision', () => {
     const link = panel.getByRole('link', { name: /^Download PDF/ });
     await link.waitFor({ timeout: 60_000 });
     const answer = await engineer.request.get((await link.getAttribute('href')) ?? '');
-    const text = await textOfPdf(await answer.body());
+    // Where a line of the sheet ends is no matter here.
+    const text = (await textOfPdf(await answer.body())).replaceAll(/\s+/g, '');
     const [{ payload_hash }] = await world.server.db.query(
       "SELECT payload_hash FROM revision WHERE label = 'B'",
     );
     expect(text).toContain(payload_hash);
-    for (const signed of [/Remi Okafor/, /Reviewing engineer/]) expect(text).toMatch(signed);
+    for (const signed of ['RemiOkafor', 'Reviewingengineer']) expect(text).toContain(signed);
     for (const checked of [/Read blind/, /3 of \d+/, /Check list of the dam, as it stood/])
       expect(text).toMatch(checked);
     expect(text).not.toContain('DRAFT');
