@@ -35,6 +35,10 @@ const en = {
   wasRead: (status: string) => `Frozen: ${status}.`,
   isRead: (status: string) => `Now: ${status}.`,
   equal: 'equal',
+  equalPlaces: (count: number) =>
+    `Not listed: ${count} ${count === 1 ? 'place' : 'places'} of profiles, equal in every figure.`,
+  morePlaces: (count: number) =>
+    `${count} more ${count === 1 ? 'place' : 'places'} of profiles ${count === 1 ? 'differs' : 'differ'}; the CSV file lists all.`,
   plusMinusDiffers: '± differs',
   newFindings: 'Found now, not in the record',
   goneFindings: 'In the record, not found now',

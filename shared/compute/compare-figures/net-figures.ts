@@ -18,7 +18,7 @@ import type { Figure, FigureGroup, FigureName, Quantity } from './figure-types.t
 export function figuresOf(net: { document: FlowNetDocument; reading: NetReading }): FigureGroup[] {
   const { reading } = net;
   const { outlets } = reading.quantities;
-  return [
+  return eachOnce([
     levelsOf(net.document),
     netOf(reading),
     // One outlet has what the net has.
@@ -27,7 +27,18 @@ export function figuresOf(net: { document: FlowNetDocument; reading: NetReading 
     ...reading.profiles.flatMap((profile) => [profileOf(profile), ...profile.samples.map(sampleOf(profile))]),
     ...reading.exits.map(exitOf),
     ...reading.stability.heave.map(heaveOf),
-  ];
+  ]);
+}
+
+/** A wall may stand beside one outlet twice: what shares an id is numbered, so that each is found again. */
+function eachOnce(groups: readonly FigureGroup[]): FigureGroup[] {
+  const seen = new Map<string, number>();
+  return groups.map((each) => {
+    const key = `${each.kind} ${each.id}`;
+    const before = seen.get(key) ?? 0;
+    seen.set(key, before + 1);
+    return before === 0 ? each : { ...each, id: `${each.id} ${before + 1}` };
+  });
 }
 
 const figure = (

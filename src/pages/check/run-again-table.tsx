@@ -1,6 +1,7 @@
-import { Fragment, useState } from 'react';
+import { Fragment, useMemo, useState } from 'react';
 import { differenceText, givenRuns } from '#client/features/desk/components/figure-beside.ts';
 import { type FigureUnits, figureLabel } from '#client/features/desk/components/figure-unit.ts';
+import { Aside } from '#client/features/desk/components/margin-section.tsx';
 import { FigureCell, MarginTable, RowHead } from '#client/features/desk/components/margin-table.tsx';
 import { Runs } from '#client/features/desk/components/runs.tsx';
 import { groupTitle } from '#client/text/figure-names.ts';
@@ -11,6 +12,7 @@ import {
   type GroupBeside,
 } from '#shared/compute/compare-figures/figures-beside.ts';
 import type { RunAgain } from '#shared/compute/compare-figures/run-again.ts';
+import { shownGroups } from './shown-groups.ts';
 
 interface RunAgainTableProps {
   result: RunAgain;
@@ -23,7 +25,10 @@ interface RunAgainTableProps {
 export function RunAgainTable({ result, units, engines }: RunAgainTableProps) {
   const [onlyDiffering, setOnlyDiffering] = useState(false);
   const { head } = text;
-  const groups = onlyDiffering ? result.groups.map(withDiffering) : result.groups;
+  const { groups, equalPlaces, morePlaces } = useMemo(
+    () => shownGroups(result.groups, onlyDiffering),
+    [result, onlyDiffering],
+  );
   return (
     <>
       {result.counts.differ > 0 ? (
@@ -41,18 +46,17 @@ export function RunAgainTable({ result, units, engines }: RunAgainTableProps) {
         caption={text.caption}
         heads={[head.figure, head.frozen(engines[0]), head.now(engines[1]), head.difference]}
       >
-        {groups
-          .filter((group) => group.figures.length > 0)
-          .map((group) => (
-            <Group key={keyOf(group)} group={group} units={units} />
-          ))}
+        {groups.map((group) => (
+          <Group key={keyOf(group)} group={group} units={units} />
+        ))}
       </MarginTable>
+      {equalPlaces > 0 ? <Aside>{text.equalPlaces(equalPlaces)}</Aside> : null}
+      {morePlaces > 0 ? <Aside>{text.morePlaces(morePlaces)}</Aside> : null}
     </>
   );
 }
 
 const keyOf = ({ kind, one, other }: GroupBeside) => `${kind} ${(one ?? other)?.id}`;
-const withDiffering = (group: GroupBeside) => ({ ...group, figures: group.figures.filter(differs) });
 
 function Group({ group, units }: { group: GroupBeside; units: FigureUnits }) {
   return (

@@ -64,6 +64,27 @@ describe('a net run again by the engine that froze it', () => {
     expect(besideFrozen(document, now, nearly).counts).toMatchObject({ differ: 0, shown: 1 });
   });
 
+  it('finds again what lies between the same lines twice', () => {
+    const heave = (factor: number) => ({
+      wall: 'wall',
+      outlet: 'bed',
+      at: [0, 0] as [number, number],
+      depth: 4,
+      width: 2,
+      meanExcessHead: 1,
+      meanExcessHeadPlusMinus: null,
+      factor,
+      note: '',
+    });
+    const both = { ...now, stability: { heave: [heave(2), heave(3)], creep: null } };
+    const groups = besideFrozen(document, both, both).groups.filter(({ kind }) => kind === 'heave');
+    const factors = groups.map(({ figures }) => figures.find(({ what }) => what === 'heaveFactor'));
+    expect(factors.map((each) => [each?.one.value, each?.other.value])).toEqual([
+      [2, 2],
+      [3, 3],
+    ]);
+  });
+
   it('says what is found now and what no more', () => {
     const finding = { ...now.findings[0]!, code: 'onlyThen', entityIds: ['b', 'a'] };
     const before = { ...now, findings: [...now.findings, finding] };
