@@ -240,6 +240,8 @@ describe('from a scan to a decision', () => {
   it('the two revisions stand beside one another, by figures and over the same sheet', async () => {
     await reviewer.getByRole('link', { name: /^Compare: revision A/ }).click();
     await reviewer.getByRole('heading', { name: 'Compare nets', level: 1 }).waitFor();
+    // The schedule of the page that is left is called as the table of the next.
+    await reviewer.getByRole('application', { name: /^Sheet of .*revision A/ }).waitFor();
     const points = reviewer.getByRole('region', { name: 'Reading points' });
     const row = points.getByRole('row').filter({ hasText: 'P2' });
     await row.waitFor();
@@ -248,7 +250,6 @@ describe('from a scan to a decision', () => {
     expect(cells.slice(0, 3)).toEqual([92, 92, 0]);
     expect(cells[3]).toBe(cells[4]);
     expect([cells[5], cells[8]]).toEqual([0, 0]);
-    await reviewer.getByRole('application', { name: /^Sheet of .*revision A/ }).waitFor();
     await reviewer.getByLabel('Show', { exact: true }).selectOption('Side by side');
     await reviewer.getByText(/Both views show the same offsets and elevations/).waitFor();
     await reviewer.getByRole('application', { name: /^Sheet of .*revision B/ }).waitFor();
