@@ -216,14 +216,16 @@ async function toFinish(manager: EntityManager, personId: string): Promise<Waiti
       ORDER BY n.updated_at DESC LIMIT ${MOST_OF_A_KIND}`,
     [personId],
   );
-  const items: WaitingItem[] = [];
-  for (const row of rows) {
-    const reading = await readingIfAny(manager, await placeOfNet(manager, row.net_id));
-    if (reading && reading.setOut.state !== 'fitted')
-      items.push(itemOf('calibrate', row, { text: `Put ${titleOf(row)} to scale` }));
-    else if (reading?.state !== 'read') items.push(itemOf('trace', row, { text: `Finish ${titleOf(row)}` }));
-  }
-  return items;
+  // Nets that were not read lately are read in threads of their own, several at a time.
+  const items = await Promise.all(rows.map((row) => unfinished(manager, row)));
+  return items.filter((item) => item !== null);
+}
+
+async function unfinished(manager: EntityManager, row: NetRow): Promise<WaitingItem | null> {
+  const reading = await readingIfAny(manager, await placeOfNet(manager, row.net_id));
+  if (reading && reading.setOut.state !== 'fitted')
+    return itemOf('calibrate', row, { text: `Put ${titleOf(row)} to scale` });
+  return reading?.state === 'read' ? null : itemOf('trace', row, { text: `Finish ${titleOf(row)}` });
 }
 
 /** Drawings the reader uploaded that nobody has begun to work on. */
