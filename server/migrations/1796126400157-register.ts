@@ -68,7 +68,8 @@ const TABLES = `
 
 /**
  * Words are what stands between signs, so that HF-118/03 is found by 118 as well as by HF-118/03, and by HF11803,
- * which `number_in_one` adds. Only words are kept, no places: a net with many long notes has to fit a tsvector.
+ * which `number_in_one` adds. Only words are kept, no places: a net with many long notes has to fit a tsvector. A sort
+ * key is cut, since an index takes some 2,700 bytes of all its columns and names have up to 200 characters.
  */
 const WORDS = `
   CREATE FUNCTION words_apart(said text) RETURNS text LANGUAGE sql IMMUTABLE AS $$
@@ -85,7 +86,8 @@ const WORDS = `
     SELECT regexp_replace(words_apart(number), '\\s+', '', 'g')
   $$;
   CREATE FUNCTION natural_key(said text) RETURNS text LANGUAGE sql IMMUTABLE AS $$
-    SELECT regexp_replace(regexp_replace(lower(said), '(\\d+)', '00000000000\\1', 'g'), '\\d*(\\d{12})', '\\1', 'g')
+    SELECT left(regexp_replace(regexp_replace(lower(said), '(\\d+)', '00000000000\\1', 'g'), '\\d*(\\d{12})', '\\1', 'g'),
+      100)
   $$`;
 
 const FACTS = `

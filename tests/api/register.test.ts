@@ -323,6 +323,27 @@ describe('a search', () => {
     expect((await read(stranger.caller, { q: 'octob' })).total).toBe(0);
   });
 
+  it('takes names and notes of any length and kind, which must never keep a change from being saved', async () => {
+    const { caller, netId, sectionId, sheetId, damId } = await addNet(app);
+    const drawing = await drawingOf({ sheetId });
+    const longest = (sign: string) => sign.repeat(200).slice(0, 200);
+    await caller.patch(`/dams/${damId}`, { name: longest('7.') }).expect(200);
+    await caller.patch(`/drawings/${drawing}`, { number: longest('1.'), title: longest('ß') }).expect(200);
+    await caller.patch(`/sections/${sectionId}`, { name: longest('水') }).expect(200);
+    await caller.patch(`/nets/${netId}`, { name: longest('🜄') }).expect(200);
+    await writeNote(caller, netId, 'x'.repeat(4000));
+    for (let n = 0; n < 3; n += 1)
+      await writeNote(
+        caller,
+        netId,
+        Array.from({ length: 800 }, (_, m) => `w${n}${m}`)
+          .join(' ')
+          .slice(0, 4000),
+      );
+    expect(await idsOf(caller, { q: 'w07', sort: 'dam' })).toEqual([netId]);
+    await expectKeptUp();
+  });
+
   it('follows the name of the dam', async () => {
     await place.caller.patch(`/dams/${place.damId}`, { name: 'Low Marsh Dam' }).expect(200);
     expect(await search('low marsh', { kind: 'net' })).toEqual([place.netId]);
