@@ -271,7 +271,7 @@ describe('from a scan to a decision', () => {
     );
     expect(text).toContain(payload_hash);
     for (const signed of ['RemiOkafor', 'Reviewingengineer']) expect(text).toContain(signed);
-    for (const checked of [/Read blind/, /3 of \d+/, /Check list of the dam, as it stood/])
+    for (const checked of [/Readblind/, /Figuresticked3of\d+/, /Checklistofthedam,asitstood/])
       expect(text).toMatch(checked);
     expect(text).not.toContain('DRAFT');
   });
