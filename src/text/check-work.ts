@@ -53,7 +53,6 @@ const enBlind = {
   declineDo: 'Show the figures',
   kept: 'What you enter is kept in this browser until you seal it.',
   panes: { sheet: 'Sheet', reading: 'Reading' },
-  openCheck: 'Open the check',
 } as const;
 export const blindText = inLanguage({ en: enBlind });
 

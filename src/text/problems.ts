@@ -18,6 +18,7 @@ const en = {
   tryAgain: 'Try again',
   linkInvalid: 'This link does not work',
   toDams: 'Go to your dams',
+  openCheck: 'Open the check',
   notFoundTitle: 'Not found',
   notFound: 'There is nothing at this address, or you have no part on the dam it belongs to.',
   askForPart: 'Ask an engineer of the dam to give you a part on it.',

@@ -7,7 +7,6 @@ import { PublicLayout } from '#client/layouts/public-layout.tsx';
 import { ApiProblem } from '#client/lib/api-problem.ts';
 import { paths } from '#client/lib/paths.ts';
 import { onSignInMoment } from '#client/lib/sign-in-state.ts';
-import { blindText } from '#client/text/check-work.ts';
 import { problemText as text } from '#client/text/problems.ts';
 import { NotFoundPage } from './not-found-page.tsx';
 
@@ -54,7 +53,7 @@ function KeptBack({ error }: { error: ApiProblem }) {
       <p className="mb-3">{error.message}</p>
       <div className="mt-4 flex flex-wrap gap-2">
         <ButtonLink look="main" to={paths.revision(revisionId)}>
-          {blindText.openCheck}
+          {text.openCheck}
         </ButtonLink>
         <ButtonLink to={paths.dams}>{text.toDams}</ButtonLink>
       </div>
