@@ -64,8 +64,15 @@ describe('the figures of a revision that a reviewer may still read blind', () =>
     await reviewer.caller.post(`/revisions/${revisionId}/decision`, decision).expect(409);
     // The list tells letters and states, no figure.
     await reviewer.caller.get(`/nets/${netId}/revisions`).expect(200);
+    const dropsIn = async (caller: typeof sent.caller) => {
+      const { body } = await caller.get(`/dams/${damId}/drawings`).expect(200);
+      return body.items[0].sections[0].nets[0].drops;
+    };
+    expect(await dropsIn(sent.caller)).toBe(10);
+    expect(await dropsIn(reviewer.caller)).toBeNull();
     await reviewer.caller.post(`/revisions/${revisionId}/figure-openings`).expect(201);
     for (const address of told) await reviewer.caller.get(address).expect(200);
+    expect(await dropsIn(reviewer.caller)).toBe(10);
   });
 
   it('are not in what is shown meanwhile: lines, calibration and levels are', async () => {
