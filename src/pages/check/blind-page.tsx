@@ -93,7 +93,7 @@ export function BlindPage({ view }: { view: BlindView }) {
                 onType={(next) => kept.setState(next, true)}
                 placing={placing.pointId}
                 onPlace={placing.begin}
-                onSealed={() => kept.setState(kept.getInitialState(), true)}
+                onSealed={() => kept.setState(parseKept(null, view), true)}
               />
             </aside>
           </div>
