@@ -1,6 +1,6 @@
 import type { Page } from 'playwright-core';
 
-/** Boxes that may be wider than a narrow page, as they scroll by themselves: the sheet, tables of figures, rows of tools. */
+/** What makes a narrow page scroll sideways; boxes that scroll by themselves, as tables of figures do, are none of it. */
 export async function faultsAt320(page: Page, state: string): Promise<string[]> {
   const before = page.viewportSize();
   // 1280 CSS pixels at 400 %, by which WCAG 2.2 (1.4.10) measures.
@@ -11,7 +11,11 @@ export async function faultsAt320(page: Page, state: string): Promise<string[]> 
     if (scrollWidth <= clientWidth) return [];
     const wide = [...document.querySelectorAll('body *')].filter((each) => {
       const { right, width } = each.getBoundingClientRect();
-      return width > 0 && right > clientWidth + 1 && !each.parentElement?.closest('[data-seen-as-wide]');
+      for (let at = each.parentElement; at !== null && at !== document.body; at = at.parentElement) {
+        // Scrolls by itself, or is cut: then it widens nothing.
+        if (getComputedStyle(at).overflowX !== 'visible') return false;
+      }
+      return width > 0 && right > clientWidth + 1;
     });
     return wide.slice(0, 3).map((each) => `${scrollWidth} px wide: ${each.outerHTML.slice(0, 120)}`);
   });

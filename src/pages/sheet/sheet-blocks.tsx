@@ -15,11 +15,11 @@ export function Rich({ text }: { text: string }) {
 /** Labels with their values. */
 export function Facts({ rows }: { rows: readonly SheetFact[] }) {
   return (
-    <dl className="m-0 grid grid-cols-[minmax(110px,1fr)_2fr] gap-x-3 gap-y-0.5">
+    <dl className="m-0 grid grid-cols-[minmax(110px,1fr)_minmax(0,2fr)] gap-x-3 gap-y-0.5">
       {rows.map(({ label, value }) => (
         <div key={label} className="contents">
           <dt className="text-ink-2">{label}</dt>
-          <dd className="m-0 break-words whitespace-pre-line">
+          <dd className="m-0 whitespace-pre-line [overflow-wrap:anywhere]">
             <Rich text={value} />
           </dd>
         </div>

@@ -10,7 +10,7 @@ import { NO_RULER, rulerOf } from '../model/ruler.ts';
 import { areaWords, legCells, lengthDecimals, rulerCopy, rulerHeads, wholeCells } from './ruler-words.ts';
 
 /** With more legs than this the table is scrolled, and takes the pointer for it. */
-const LEGS_IN_SIGHT = 8;
+const LEGS_IN_SIGHT = 7;
 
 /** What the ruler has measured, leg by leg, while it is in hand. */
 export function RulerPanel({ store }: { store: DeskStore }) {
@@ -28,7 +28,7 @@ function Measured({ store }: { store: DeskStore }) {
     <section
       data-over-sheet={figures.legs.length > LEGS_IN_SIGHT || undefined}
       aria-label={text.title}
-      className="max-h-64 max-w-full overflow-auto rounded-sheet border border-rule bg-film px-2.5 py-1.5 text-sm"
+      className="max-h-[min(16rem,40cqh)] max-w-full overflow-auto rounded-sheet border border-rule bg-film px-2.5 py-1.5 text-sm"
     >
       {figures.legs.length === 0 ? (
         <p className="m-0">{text.empty}</p>
