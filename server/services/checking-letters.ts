@@ -14,7 +14,9 @@ export function revisionFacts({ dam, drawing, section, netName, label }: Revisio
   const { number, title, revision } = drawing;
   return {
     damName: dam.name,
-    drawing: [number || title || 'drawing without a number', revision && `rev ${revision}`].filter(Boolean).join(' '),
+    drawing: [number || title || 'drawing without a number', revision && `rev ${revision}`]
+      .filter(Boolean)
+      .join(' '),
     section: sectionLabel(section),
     netName,
     revision: label,
