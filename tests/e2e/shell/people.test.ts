@@ -80,6 +80,8 @@ describe('signing in', () => {
     await page.keyboard.press('Tab');
     await expect.poll(focused).toBe('Seepage along the dam');
     await page.keyboard.press('Tab');
+    await expect.poll(focused).toBe('Compare nets');
+    await page.keyboard.press('Tab');
     await expect.poll(focused).toBe('Settings and people');
     await page.getByRole('link', { name: 'Skip to the content' }).press('Enter');
     expect(await page.evaluate(() => document.activeElement?.id)).toBe('content');
@@ -93,13 +95,13 @@ describe('signing in', () => {
     await signIn(page, iris);
     await page.getByLabel('Name of the vertical datum').fill('LD 1958');
     await endSessions();
-    await page.getByRole('button', { name: 'Save' }).click();
+    await page.getByRole('button', { name: 'Save', exact: true }).click();
     const again = page.getByRole('dialog', { name: 'Sign in again' });
     await again.getByLabel('Password').fill(iris.password);
     await again.getByRole('button', { name: 'Sign in' }).click();
     await again.waitFor({ state: 'detached' });
     expect(await page.getByLabel('Name of the vertical datum').inputValue()).toBe('LD 1958');
-    await page.getByRole('button', { name: 'Save' }).click();
+    await page.getByRole('button', { name: 'Save', exact: true }).click();
     await page.getByText('The settings are saved.').waitFor();
   });
 
@@ -110,7 +112,7 @@ describe('signing in', () => {
     await signIn(page, iris);
     await page.getByLabel('Name', { exact: true }).fill('Somebody Else');
     await endSessions();
-    await page.getByRole('button', { name: 'Save' }).click();
+    await page.getByRole('button', { name: 'Save', exact: true }).click();
     const again = page.getByRole('dialog', { name: 'Sign in again' });
     await again.getByLabel('E-mail address').fill(remi.email);
     await again.getByLabel('Password').fill(remi.password);
@@ -134,7 +136,7 @@ describe('signing in', () => {
     await signIn(other, iris);
     await other.getByRole('heading', { name: 'Your dams' }).waitFor();
     await name.fill('Iris J. Marsh');
-    await page.getByRole('button', { name: 'Save' }).click();
+    await page.getByRole('button', { name: 'Save', exact: true }).click();
     await page.getByText('The name is saved.').waitFor();
   });
 });
