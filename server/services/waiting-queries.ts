@@ -154,7 +154,10 @@ function answerText({ to_answer: open, answered, section_name: name }: AnswerRow
 const mustText = ({ must, to_answer: open }: AnswerRow) =>
   must === 0 ? '' : `${open === 1 ? 'it' : must} must be answered before acceptance`;
 
-/** Notes that name the reader, until the reader has written in them or read the answer of somebody else. */
+/**
+ * Notes that name the reader, until the reader has written in them or read the answer of somebody else; but for those
+ * that wait for an answer anyway.
+ */
 async function namedIn(manager: EntityManager, personId: string): Promise<WaitingItem[]> {
   const rows: Array<NotesRow & { author: string }> = await manager.query(
     `SELECT ${NET_COLUMNS}, a.*
@@ -162,7 +165,7 @@ async function namedIn(manager: EntityManager, personId: string): Promise<Waitin
         SELECT max(e.created_at) AS at, ${NEWEST_NOTE}, count(DISTINCT o.id)::int AS waiting,
           (array_agg(p.name ORDER BY e.created_at DESC))[1] AS author
         FROM note o JOIN note_entry e ON e.note_id = o.id JOIN person p ON p.id = e.author_id
-        WHERE o.net_id = n.id AND ${NAMES_READER} AND o.state <> 'closed'
+        WHERE o.net_id = n.id AND ${NAMES_READER} AND o.state <> 'closed' AND NOT ${TO_ANSWER}
           AND NOT (o.state = 'answered' AND NOT ${isUnreadBy('$1')})
           AND NOT EXISTS (SELECT 1 FROM note_entry l
             WHERE l.note_id = o.id AND l.author_id = $1 AND (l.created_at, l.id) > (e.created_at, e.id))

@@ -39,6 +39,7 @@ const en = {
   everybody: 'everybody’s',
   mine: 'mine',
   putAway: 'Only what was put away',
+  sheet: 'Sheet',
   name: 'Drawing, section, net',
   notes: 'Notes',
   who: 'Who',

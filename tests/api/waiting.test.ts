@@ -185,6 +185,11 @@ describe('what waits', () => {
     await tove.caller.post(`/notes/${asked}/answers`, { id: uuidv7(), text: 'It is.' }).expect(201);
     expect(await kindsFor(tove.caller)).toEqual([]);
 
+    // Who drew the net is asked to answer once, also when a note names them.
+    const toDrawer = note(uuidv7(), '@Iris Marsh please look.');
+    await tove.caller.post(`/nets/${netId}/notes`, toDrawer).expect(201);
+    expect(await kindsFor(caller)).toEqual(['answer']);
+
     const remi = await addPerson(damId, 'Remi Okafor', 'reviewer');
     await caller.post(`/nets/${netId}/notes`, note(told, '@Tove Lind or somebody else?')).expect(201);
     await remi.caller.post(`/notes/${told}/answers`, { id: uuidv7(), text: 'From the log.' }).expect(201);

@@ -11,7 +11,7 @@ export function RegisterTable({ rows, isBusy }: { rows: readonly RegisterRow[]; 
         <thead className="max-sm:sr-only">
           <tr>
             <HeadCell className="w-[88px]">
-              <span className="sr-only">{text.kind}</span>
+              <span className="sr-only">{text.sheet}</span>
             </HeadCell>
             <HeadCell>{text.name}</HeadCell>
             <HeadCell>{text.dam}</HeadCell>
