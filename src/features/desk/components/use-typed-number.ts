@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useLayoutEffect, useRef, useState } from 'react';
 import { enteredText as asEntered } from '#client/lib/figures.ts';
 import { numberFault } from '#client/lib/number-fault.ts';
 import { parseTypedNumber } from '#client/lib/parse-number.ts';
@@ -37,6 +37,13 @@ export function useTypedNumber({
 }: TypedNumber) {
   const [typed, setTyped] = useState<string | null>(null);
   const [error, setError] = useState<string | null>(null);
+  const justEntered = useRef<HTMLInputElement | null>(null);
+  // The figure as entered may be written otherwise than as shown, and with it goes what Tab had chosen: what is typed
+  // next would be added to the old figure instead of taking its place.
+  useLayoutEffect(() => {
+    justEntered.current?.select();
+    justEntered.current = null;
+  });
 
   function commit(): void {
     if (typed === null) return;
@@ -69,7 +76,11 @@ export function useTypedNumber({
     error,
     input: {
       value: typed ?? shown ?? asEntered(value),
-      onFocus: () => setTyped((now) => now ?? asEntered(value)),
+      onFocus: ({ currentTarget }: { currentTarget: HTMLInputElement }) => {
+        if (typed !== null) return;
+        justEntered.current = currentTarget;
+        setTyped(asEntered(value));
+      },
       onChange: (event: { target: { value: string } }) => {
         setTyped(event.target.value);
         setError(null);
