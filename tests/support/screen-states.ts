@@ -41,7 +41,7 @@ const drawing = (name: string, number: string, bring: (page: Page) => Promise<vo
 const onDesk = (
   name: string,
   bring: (page: Page) => Promise<void>,
-  more: Pick<Screen, 'covers'> = {},
+  more: Pick<Screen, 'covers' | 'goesOn'> = {},
 ): Screen => ({
   ...more,
   name: `desk, ${name}`,
