@@ -47,7 +47,7 @@ const onDesk = (
   name: `desk, ${name}`,
   path: NET,
   async open(page) {
-    await openDesk(page);
+    if (!more.goesOn) await openDesk(page);
     await bring(page);
   },
 });

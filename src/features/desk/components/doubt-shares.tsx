@@ -68,7 +68,7 @@ function Share({
         <button
           type="button"
           aria-label={text.changeNamed(name)}
-          className="touch min-h-6 underline"
+          className="touch pointer-fine:min-h-6 underline"
           onClick={() => onOpen(form)}
         >
           {text.change}

@@ -13,7 +13,7 @@ export function SnapSwitches({ store }: { store: DeskStore }) {
     <>
       <AidTitle>{text.snapTitle}</AidTitle>
       {SNAP_KINDS.map((kind) => (
-        <label key={kind} className="touch flex min-h-6 items-center gap-2.5 py-0.5">
+        <label key={kind} className="touch flex pointer-fine:min-h-6 items-center gap-2.5 py-0.5">
           <input
             type="checkbox"
             className="accent-equipotential"

@@ -68,7 +68,7 @@ type SwitchProps = { label: string; checked: boolean; onChange(checked: boolean)
 
 function Switch({ label, checked, onChange }: SwitchProps) {
   return (
-    <label className="touch mt-1.5 flex min-h-6 items-center gap-2.5">
+    <label className="touch mt-1.5 flex pointer-fine:min-h-6 items-center gap-2.5">
       <input
         type="checkbox"
         className="accent-equipotential"

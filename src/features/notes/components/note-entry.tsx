@@ -14,7 +14,7 @@ import { useChangeEntry } from '../api/note-mutations.ts';
 import { earlierTextsQuery } from '../api/note-queries.ts';
 import { EntryFiles } from './entry-files.tsx';
 import { NamingTextArea } from './naming-text-area.tsx';
-import { ACTION } from './note-looks.ts';
+import { ACTION_AMONG_WORDS } from './note-looks.ts';
 
 interface NoteEntryProps {
   note: NoteDto;
@@ -28,8 +28,6 @@ interface NoteEntryProps {
 }
 
 const MINUTE_MS = 60_000;
-/** Pressed within 40 px on touch screens without parting the lines of the text it stands in. */
-const AMONG_WORDS = `${ACTION} pointer-coarse:-my-3`;
 
 /** What one person said: text with names, files, when, and for a while the way to change it. */
 export function NoteEntry({ note, entry, target, people, ownId, canWrite, now }: NoteEntryProps) {
@@ -51,7 +49,7 @@ export function NoteEntry({ note, entry, target, people, ownId, canWrite, now }:
             {', '}
             <button
               type="button"
-              className={AMONG_WORDS}
+              className={ACTION_AMONG_WORDS}
               aria-expanded={withEarlier}
               title={withEarlier ? text.hideEarlier : text.showEarlier}
               onClick={() => setWithEarlier(!withEarlier)}
@@ -65,7 +63,7 @@ export function NoteEntry({ note, entry, target, people, ownId, canWrite, now }:
             {' '}
             <button
               type="button"
-              className={AMONG_WORDS}
+              className={ACTION_AMONG_WORDS}
               title={text.changeHint}
               onClick={() => setChanging(true)}
             >
