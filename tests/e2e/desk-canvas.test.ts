@@ -150,6 +150,8 @@ describe('tracing by hand', () => {
     await page.keyboard.press('k');
     await hand.click([700, 250]);
     const known = async () => entitiesOf((await saved()).document, 'knownPoint')[0]?.value.at;
+    // It is set once it is known whether drawn lines cross there.
+    await expect.poll(known).toBeDefined();
     const before = await known();
     const magnifier = page.getByRole('group', { name: /Magnified eight times/ });
     await magnifier.focus();
