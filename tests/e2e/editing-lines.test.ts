@@ -68,7 +68,7 @@ async function choosePlumb(): Promise<void> {
   await page.getByRole('region', { name: 'Equipotential', exact: true }).waitFor();
 }
 
-const prompt = (words: RegExp) => page.locator('[data-over-sheet]').filter({ hasText: words });
+const prompt = (words: RegExp) => hand.sheet.locator('p').filter({ hasText: words });
 
 describe('the chosen line', () => {
   it('is trimmed at one boundary and extended to another', async () => {

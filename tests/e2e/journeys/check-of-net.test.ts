@@ -110,10 +110,11 @@ describe('a net that is looked into', () => {
   it('shows the same on a phone, pane by pane', async () => {
     await page.setViewportSize(PHONE);
     await page.getByRole('button', { name: 'Schedule', exact: true }).click();
+    // What was open on the wide screen is open still.
     await scheduleRow(page, '.+')
-      .getByRole('button', { name: /^How counted/ })
+      .getByRole('button', { name: /^Close/ })
       .first()
-      .click();
+      .waitFor();
     await page.getByRole('button', { name: 'Show on the sheet' }).click();
     const reading = pane(/^How .+ is read$/);
     await reading.getByText('On the sheet: the strip').waitFor();
