@@ -45,7 +45,7 @@ describe('the calculation sheet', () => {
 
   it('of a revision is asked for on the check page, and is read on the screen', async () => {
     await sendForChecking(page);
-    await page.getByRole('link', { name: 'Revision A' }).click();
+    await page.getByRole('link', { name: 'Revision A', exact: true }).click();
     // The desk, which has a panel of the same name, stays until the check page is there.
     await page.getByText('Revision A, shown here').waitFor();
     const answer = await page.request.get((await (await sheetLink()).getAttribute('href')) ?? '');
