@@ -17,7 +17,14 @@ import { lineChoiceOf } from '../model/tool-choice.ts';
 import { NO_OVERLAY, type ToolOverlay } from '../model/tool-overlay.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import { type SheetFrame, sheetZoom, type Viewport } from '../model/viewport.ts';
-import { buildSheetScene, type NoteBalloon, noteIdOf, partScene } from '../render/build-scene.ts';
+import {
+  buildDragged,
+  buildSheetScene,
+  type NoteBalloon,
+  noteIdOf,
+  partScene,
+  type SceneInput,
+} from '../render/build-scene.ts';
 import { createGridLayer } from '../render/grid-layer.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
 import { LABEL_PREFIX, type WordPlaces } from '../render/place-words.ts';
@@ -82,6 +89,9 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let crowded: ReadonlyMap<string, SceneItem> = new Map();
   let words: { readonly zoom: number; readonly places: WordPlaces } | null = null;
   let active: readonly SceneItem[] = [];
+  /** Of what is being worked on, that which is not dragged. */
+  let resting: readonly SceneItem[] = [];
+  let builtFor: { readonly state: DeskState; readonly input: SceneInput } | null = null;
 
   const view = () => views.getState().view;
   const balloons = (): Balloon[] => balloonsOf(scene, view(), options.notes());
@@ -94,7 +104,27 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   function showScene(): void {
     sceneDue = false;
     const state = store.getState();
-    const built = buildSheetScene({
+    const input = sceneInput(state);
+    if (onlyDrags(state)) {
+      active = [...resting, ...buildDragged(input)];
+      showOverlay();
+      return;
+    }
+    const built = buildSheetScene(input);
+    scene = built.items;
+    words = { zoom: view().zoom, places: built.places };
+    crowded = new Map(built.crowded.map((label) => [label.id, label]));
+    renderer.setScanLook({ faded: state.aids.fadePct / 100, inverted: state.aids.inverted });
+    const parts = partScene(scene);
+    active = parts.active;
+    renderer.showBase(parts.base);
+    keepForDrag(state, input, parts);
+    showOverlay();
+    showGrid();
+  }
+
+  function sceneInput(state: DeskState): SceneInput {
+    return {
       document: state.document,
       preview: state.preview,
       reading: state.reading,
@@ -111,16 +141,27 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
       seenAs: view().seenAs ?? null,
       frame: options.frame,
       clickedOn: clicked.among,
-    });
-    scene = built.items;
-    words = { zoom: view().zoom, places: built.places };
-    crowded = new Map(built.crowded.map((label) => [label.id, label]));
-    renderer.setScanLook({ faded: state.aids.fadePct / 100, inverted: state.aids.inverted });
-    const parts = partScene(scene);
-    active = parts.active;
-    renderer.showBase(parts.base);
-    showOverlay();
-    showGrid();
+    };
+  }
+
+  /** When what is dragged lies wholly among what is being worked on, the next movements build nothing else anew. */
+  function keepForDrag(state: DeskState, input: SceneInput, parts: ReturnType<typeof partScene>): void {
+    const dragged = new Set(isDragging(state) ? buildDragged(input).map(({ id }) => id) : []);
+    const isWhole = dragged.size > 0 && !parts.base.some(({ id }) => dragged.has(id));
+    builtFor = isWhole ? { state, input } : null;
+    resting = parts.active.filter(({ id }) => !dragged.has(id));
+  }
+
+  /** True when since the last scene nothing but the place of what is dragged has changed. */
+  function onlyDrags(state: DeskState): boolean {
+    if (builtFor === null) return false;
+    const { state: before, input } = builtFor;
+    return (
+      input.zoom === view().zoom &&
+      input.seenAs === (view().seenAs ?? null) &&
+      !looksDiffer({ ...state, preview: before.preview }, before) &&
+      Object.keys(state.preview).join() === Object.keys(before.preview).join()
+    );
   }
 
   function showGrid(): void {
@@ -245,7 +286,10 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   return {
     renderer,
     host,
-    refresh: dueScene,
+    refresh() {
+      builtFor = null;
+      dueScene();
+    },
     act: (type) => host.handle({ type }, keyView()),
     destroy() {
       sceneDue = false;

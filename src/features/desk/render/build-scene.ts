@@ -91,6 +91,22 @@ export function buildSheetScene(input: SceneInput): PlacedScene {
   return placeWords(itemsThrough(items, input.seenAs), input.zoom, input.keptWords ?? null);
 }
 
+/** Of a scene only what belongs to the entities that are being dragged. */
+export function buildDragged(input: SceneInput): SceneItem[] {
+  const { document, preview, reading } = input;
+  const dragged = Object.fromEntries(
+    Object.entries(document.entities).filter(([id]) => preview[id] !== undefined),
+  );
+  return buildScene({
+    ...input,
+    document: { ...document, entities: dragged },
+    reading: reading && { ...reading, findings: [] },
+    guides: {},
+    notes: [],
+    frame: null,
+  });
+}
+
 function frameItem(frame: SheetFrame | null): SceneLine[] {
   if (frame === null) return [];
   const [left, top, width, height] = frame;

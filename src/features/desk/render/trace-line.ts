@@ -52,22 +52,25 @@ export class TraceLine extends Polyline {
     const dash = look.dashPx.map((length) => length / zoom);
     strokePieces(context, pieces, look.colour, widthPx / zoom, dash);
     if (ticks !== null) strokePath(context, ticks, look.colour, HATCH_PX, zoom);
-    this.endMarks(context, zoom);
+    this.endMarks(context, zoom, seen);
     context.restore();
   }
 
-  /** The marks at both ends, on halos of their own as they reach beyond the line's. */
-  private endMarks(context: CanvasRenderingContext2D, zoom: number): void {
+  /** The marks at both ends, on halos of their own as they reach beyond the line's; those out of sight are left out. */
+  private endMarks(context: CanvasRenderingContext2D, zoom: number, seen: SheetFrame): void {
     const { points, look } = this.item;
-    const first = points[0];
-    const last = points.at(-1);
+    const [first, last] = [points[0], points.at(-1)];
     if (look.end === 'none' || first === undefined || last === undefined) return;
-    const path = new Path2D();
     // A water level stands where the water ends: at the upper end of a face, at the start of a phreatic line.
-    if (look.end === 'level') addLevel(path, last[1] < first[1] ? last : first, 1 / zoom);
-    else addEnd(path, look.end, first, points[1] ?? first, 1 / zoom);
-    if (look.end !== 'level' && points.length > 1)
-      addEnd(path, look.end, last, points.at(-2) ?? last, 1 / zoom);
+    const level = last[1] < first[1] ? last : first;
+    const ends = look.end === 'level' ? [level] : points.length > 1 ? [first, last] : [first];
+    const inSight = ends.filter(([x, y]) => framesMeet([x, y, 0, 0], seen));
+    if (inSight.length === 0) return;
+    const path = new Path2D();
+    for (const end of inSight) {
+      if (look.end === 'level') addLevel(path, end, 1 / zoom);
+      else addEnd(path, look.end, end, (end === first ? points[1] : points.at(-2)) ?? end, 1 / zoom);
+    }
     const widthPx = look.end === 'bar' ? 2 : 1.4;
     context.globalAlpha = HALO.alpha;
     strokePath(context, path, HALO.colour, widthPx + HALO.widthPx, zoom);

@@ -1,5 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { buildScene, type SceneInput } from '#client/features/desk/render/build-scene.ts';
+import {
+  buildDragged,
+  buildScene,
+  partScene,
+  type SceneInput,
+} from '#client/features/desk/render/build-scene.ts';
 import { LABEL_HEIGHT_PX, labelWidthPx } from '#client/features/desk/render/label-layout.ts';
 import { placeWords } from '#client/features/desk/render/place-words.ts';
 import {
@@ -67,6 +72,19 @@ function recordingSink() {
 }
 
 describe('the scene', () => {
+  it('of what is dragged alone is what the whole scene has of it, and lies wholly among what is being worked on', () => {
+    const moved = { ...line, points: [line.points[0]!, [150, 450] as [number, number]] };
+    const input = inputOf({
+      preview: { [LINE_A]: moved },
+      selection: { kind: 'line', ids: [LINE_A], vertex: 1 },
+    });
+    const dragged = buildDragged(input);
+    const ids = new Set(dragged.map(({ id }) => id));
+    expect(dragged.length).toBeGreaterThan(2);
+    expect(buildScene(input).filter(({ id }) => ids.has(id))).toEqual(dragged);
+    expect(partScene(buildScene(input)).base.map(({ id }) => id)).toEqual([LINE_B]);
+  });
+
   it('shows the dragged line where it is dragged to, and handles only on the chosen line', () => {
     const moved = {
       ...line,
