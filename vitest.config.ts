@@ -24,7 +24,12 @@ export default defineConfig({
       },
       {
         extends: true,
-        test: { name: 'api', include: WITH_DATABASE, globalSetup: ['tests/support/cluster.ts'] },
+        test: {
+          name: 'api',
+          include: WITH_DATABASE,
+          globalSetup: ['tests/support/cluster.ts'],
+          isolate: false,
+        },
       },
       {
         extends: true,

@@ -1,25 +1,28 @@
-import { type ComponentType, lazy, type ReactNode, Suspense } from 'react';
-import { BrowserRouter, Route, Routes } from 'react-router-dom';
+import { type ComponentType, Suspense } from 'react';
+import { BrowserRouter, matchRoutes, type RouteObject, useRoutes } from 'react-router-dom';
+import { FetchedPage, fetchable } from './components/fetched-page.tsx';
 import { Loading } from './components/loading.tsx';
 import { NotFoundPage } from './pages/error/not-found-page.tsx';
 import { RouteErrors } from './pages/error/route-errors.tsx';
 import { SignedIn } from './pages/signed-in/signed-in.tsx';
 
-/** A page fetched when it is first visited; it shows "Loading…" in its own place and keeps its errors to itself. */
-function page(path: string, load: () => Promise<ComponentType>): ReactNode {
-  const Loaded = lazy(async () => ({ default: await load() }));
+/** A page that keeps its errors to itself. The page before it stays until it is here. */
+function page(path: string, load: () => Promise<ComponentType>): RouteObject {
+  const of = fetchable(load);
   const element = (
     <RouteErrors>
       <Suspense fallback={<Loading />}>
-        <Loaded />
+        <FetchedPage key={path} of={of} />
       </Suspense>
     </RouteErrors>
   );
-  return <Route key={path} path={path} element={element} />;
+  return { path, element, handle: of.fetch };
 }
 
+const SIGN_IN = '/sign-in';
+
 const publicPages = [
-  page('/sign-in', async () => (await import('./pages/sign-in/sign-in-page.tsx')).SignInPage),
+  page(SIGN_IN, async () => (await import('./pages/sign-in/sign-in-page.tsx')).SignInPage),
   page('/invitation', async () => (await import('./pages/invitation/invitation-page.tsx')).InvitationPage),
   page(
     '/forgot-password',
@@ -32,7 +35,7 @@ const publicPages = [
   page('/stop-digest', async () => (await import('./pages/stop-digest/stop-digest-page.tsx')).StopDigestPage),
 ];
 
-const signedInPages = [
+const signedInPages: RouteObject[] = [
   page('/', async () => (await import('./pages/dams/dams-page.tsx')).DamsPage),
   page('/dams/new', async () => (await import('./pages/dams/new-dam-page.tsx')).NewDamPage),
   page('/register', async () => (await import('./pages/register/register-page.tsx')).RegisterPage),
@@ -66,7 +69,7 @@ const signedInPages = [
   ),
   page('/mails/:mailId', async () => (await import('./pages/mails/mail-page.tsx')).MailPage),
   page('/account', async () => (await import('./pages/account/account-page.tsx')).AccountPage),
-  <Route key="*" path="*" element={<NotFoundPage />} />,
+  { path: '*', element: <NotFoundPage /> },
 ];
 
 const behindSignIn = (
@@ -75,6 +78,17 @@ const behindSignIn = (
   </RouteErrors>
 );
 
+const routes: RouteObject[] = [...publicPages, { element: behindSignIn, children: signedInPages }];
+
+/** Fetches the page that will be shown at an address, so that the first thing shown is the page itself. */
+export async function fetchFirstPage(pathname: string, isSignedIn: boolean): Promise<void> {
+  const at = (address: string) => matchRoutes(routes, address)?.at(-1)?.route;
+  const wanted = at(pathname);
+  const isOpen = isSignedIn || publicPages.some((each) => each === wanted);
+  // Where it cannot be fetched the page itself says so.
+  await (isOpen ? wanted : at(SIGN_IN))?.handle?.().catch(() => {});
+}
+
 /**
  * The pages by their addresses. Pages fetch what they show through the query cache and no route loads or submits
  * anything, so the router without loaders is enough, which is 8 kB less for every first load.
@@ -82,10 +96,9 @@ const behindSignIn = (
 export function Pages() {
   return (
     <BrowserRouter>
-      <Routes>
-        {publicPages}
-        <Route element={behindSignIn}>{signedInPages}</Route>
-      </Routes>
+      <Shown />
     </BrowserRouter>
   );
 }
+
+const Shown = () => useRoutes(routes);

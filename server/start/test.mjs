@@ -1,7 +1,7 @@
 import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
-import { ensureChromium } from './chromium.mjs';
+import { ensureChromium, ensureWholeChromium } from './chromium.mjs';
 import { live } from './life.mjs';
 import { say } from './messages.mjs';
 import { checkNode, ensurePackages } from './packages.mjs';
@@ -19,7 +19,10 @@ await live(storageDirOf(process.env), async (life) => {
   checkNode(process.versions.node);
   await life.step(ensurePackages(projectRoot));
   await life.step(ensurePostgres());
-  if (projects.length === 0 || projects.includes('e2e')) await life.step(ensureChromium());
+  if (projects.length === 0 || projects.includes('e2e')) {
+    await life.step(ensureChromium());
+    await life.step(ensureWholeChromium());
+  }
 
   const counts = [];
   if (projects.length === 0) {

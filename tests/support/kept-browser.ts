@@ -1,7 +1,7 @@
 import { type ChildProcess, spawn } from 'node:child_process';
 import { once } from 'node:events';
 import { type BrowserContext, chromium } from 'playwright-core';
-import { ensureChromium } from '#server/start/chromium.mjs';
+import { ensureWholeChromium } from '#server/start/chromium.mjs';
 import { BROWSER_ARGS } from './browser.ts';
 
 /** A browser with a profile on the disk, which can be ended without warning and opened again. */
@@ -15,7 +15,7 @@ const LISTENING = /DevTools listening on (ws:\/\/\S+)/;
 
 export async function openKeptBrowser(profileDir: string): Promise<KeptBrowser> {
   const child = spawn(
-    await ensureChromium(),
+    await ensureWholeChromium(),
     [
       '--headless=new',
       '--remote-debugging-port=0',

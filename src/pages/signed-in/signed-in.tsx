@@ -1,6 +1,5 @@
 import { lazy, Suspense, useEffect, useState } from 'react';
 import { Navigate, Outlet, useLocation } from 'react-router-dom';
-import { Loading } from '#client/components/loading.tsx';
 import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { useSessionEnd } from '#client/features/session/hooks/use-session-end.ts';
 import { signInAndBack } from '#client/lib/paths.ts';
@@ -25,9 +24,7 @@ export function SignedIn() {
   if (!person) return <Navigate to={signInAndBack(location)} replace />;
   return (
     <>
-      <Suspense fallback={<Loading />}>
-        <Outlet />
-      </Suspense>
+      <Outlet />
       <Suspense>{ended || !session.person ? <SignInAgain person={person} /> : null}</Suspense>
     </>
   );

@@ -71,12 +71,13 @@ describe('what is traced is kept', () => {
     await page.reload();
     await page.getByRole('button', { name: 'Steps to take back' }).click();
     const steps = page.getByRole('dialog', { name: 'Choose how far to take back' });
+    await steps.getByRole('listitem').first().waitFor();
     const count = await steps.getByRole('listitem').count();
     await steps.getByRole('listitem').last().getByRole('button').click();
     await expect.poll(linesOnServer, { timeout: 20_000 }).toBe(0);
     await page.getByRole('button', { name: 'Steps to do again' }).click();
     const again = page.getByRole('dialog', { name: 'Choose how far to do again' });
-    expect(await again.getByRole('listitem').count()).toBe(count);
+    await expect.poll(() => again.getByRole('listitem').count()).toBe(count);
     await again.getByRole('listitem').last().getByRole('button').click();
     await expect.poll(linesOnServer, { timeout: 20_000 }).toBe(3);
   });

@@ -132,8 +132,8 @@ export function SheetView({
       tabIndex={controller === null ? -1 : 0}
       data-panning={panning || undefined}
       className={classNames(
-        // Panels over the sheet are never higher than it.
-        '[container-type:size] relative touch-none select-none overflow-hidden bg-desk focus-visible:outline-offset-[-3px]',
+        // Panels over the sheet are never higher than it; what takes the focus does not move the sheet.
+        '[container-type:size] relative touch-none select-none overflow-clip bg-desk focus-visible:outline-offset-[-3px]',
         panning ? 'cursor-grabbing' : cursorFor(tool),
         className,
       )}
@@ -145,51 +145,56 @@ export function SheetView({
       <LiveHelp store={store} views={views} source={help} touched={finger !== null} />
       <CrosshairMark crosshair={crosshair} views={views} />
       <RulerAtPointer store={store} views={views} />
-      <div className="pointer-events-none absolute inset-x-3 top-3 flex flex-wrap items-start justify-between gap-2 sm:inset-x-4 sm:top-3.5 @2xl:flex-nowrap [&>*]:pointer-events-auto">
-        {/* Its room is kept while it is not there, so that the buttons stay where they are. */}
-        <div className="pointer-events-none! order-last flex min-w-32 flex-1 basis-full @2xl:order-none @2xl:basis-0">
-          <PointerReadout store={store} />
+      {/*
+        Down to the labels of the grid, which stand along the foot. What is only read lets clicks through to the sheet;
+        where letters are large and the sheet is low, the panels at the foot scroll instead of covering the buttons.
+      */}
+      <div className="pointer-events-none absolute inset-x-3 top-3 bottom-8 flex flex-col justify-between gap-2 sm:inset-x-4 sm:top-3.5">
+        <div className="relative flex flex-none flex-wrap items-start justify-between gap-2 @2xl:flex-nowrap [&>*]:pointer-events-auto">
+          {/* Its room is kept while it is not there, so that the buttons stay where they are. */}
+          <div className="pointer-events-none! order-last flex min-w-32 flex-1 basis-full @2xl:order-none @2xl:basis-0">
+            <PointerReadout store={store} />
+          </div>
+          <div className="pointer-events-none! ml-auto flex flex-wrap items-start justify-end gap-2 [&_[data-over-sheet]]:pointer-events-auto">
+            <SheetMore
+              store={store}
+              views={
+                <>
+                  {pictureSwitch}
+                  <SectionViewSwitch store={store} views={views} />
+                </>
+              }
+            >
+              <GridSwitch store={store} />
+              <SheetAids store={store} noteCount={notes.length} />
+              {picture && (
+                <PictureButton
+                  of={{ store, views, raster: newest(shown, sheet), frame, notes, facts: picture }}
+                />
+              )}
+            </SheetMore>
+            <ZoomBar views={views} />
+          </div>
         </div>
-        <div className="pointer-events-none! ml-auto flex flex-wrap items-start justify-end gap-2 [&_[data-over-sheet]]:pointer-events-auto">
-          <SheetMore
-            store={store}
-            views={
-              <>
-                {pictureSwitch}
-                <SectionViewSwitch store={store} views={views} />
-              </>
-            }
-          >
-            <GridSwitch store={store} />
-            <SheetAids store={store} noteCount={notes.length} />
-            {picture && (
-              <PictureButton
-                of={{ store, views, raster: newest(shown, sheet), frame, notes, facts: picture }}
-              />
+        <div className="flex min-h-0 flex-wrap items-end justify-between gap-2 [&_[data-over-sheet]]:pointer-events-auto">
+          <div className="flex max-h-full flex-col items-start gap-2 overflow-auto">
+            <HiddenHint store={store} />
+            <CrosshairBar
+              store={store}
+              crosshair={crosshair}
+              sheet={sheet}
+              onLeave={() => element.current?.focus()}
+            />
+            <RulerPanel store={store} />
+            <EditPrompt store={store} />
+            <DraftActions store={store} onAction={(action) => controller?.act(action)} />
+          </div>
+          <MagnifierCorner followed={followed} views={views}>
+            {controller && finger === null && (
+              <Magnifier store={store} renderer={controller.renderer} followed={followed} />
             )}
-          </SheetMore>
-          <ZoomBar views={views} />
+          </MagnifierCorner>
         </div>
-      </div>
-      {/* Above the labels of the grid, which stand along the foot. What is only read lets clicks through to the sheet. */}
-      <div className="pointer-events-none absolute inset-x-3 bottom-8 flex flex-wrap items-end justify-between gap-2 [&_[data-over-sheet]]:pointer-events-auto">
-        <div className="flex flex-col items-start gap-2">
-          <HiddenHint store={store} />
-          <CrosshairBar
-            store={store}
-            crosshair={crosshair}
-            sheet={sheet}
-            onLeave={() => element.current?.focus()}
-          />
-          <RulerPanel store={store} />
-          <EditPrompt store={store} />
-          <DraftActions store={store} onAction={(action) => controller?.act(action)} />
-        </div>
-        <MagnifierCorner followed={followed} views={views}>
-          {controller && finger === null && (
-            <Magnifier store={store} renderer={controller.renderer} followed={followed} />
-          )}
-        </MagnifierCorner>
       </div>
       <KeyListDialog store={store} />
       <EntityTableDialog store={store} />
