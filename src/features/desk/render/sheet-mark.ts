@@ -2,10 +2,8 @@ import { FabricObject } from 'fabric';
 import { COLOURS } from './line-look.ts';
 import { MARK_PAINTERS } from './mark-shapes.ts';
 import type { SceneMark } from './scene.ts';
+import { MARK_REACH_PX } from './screen-part.ts';
 import { framesMeet, seenBy } from './seen-by.ts';
-
-/** How far a mark may reach from its place with its text, screen pixels. */
-const REACH_PX = 140;
 
 /** A mark at a place of the sheet that keeps its size on screen. */
 export class SheetMark extends FabricObject {
@@ -22,7 +20,7 @@ export class SheetMark extends FabricObject {
 
   override render(context: CanvasRenderingContext2D): void {
     const zoom = this.canvas?.viewportTransform[0] ?? 1;
-    const seen = seenBy(this.canvas, REACH_PX);
+    const seen = seenBy(this.canvas, MARK_REACH_PX);
     const [x, y] = this.item.at;
     if (seen === null || !framesMeet([x, y, 0, 0], seen)) return;
     context.save();

@@ -80,9 +80,9 @@ export function createSheetRenderer(
     },
   });
   const tiles = createTileLayer(host, sheet, store);
-  const base = createTraceCanvas(host, Math.round(MARGIN_DEVICE_PX / ratio()));
-  // Drawn in every frame of a drag, so it is no larger than the view.
-  const active = createTraceCanvas(host, 0);
+  const marginPx = Math.round(MARGIN_DEVICE_PX / ratio());
+  const base = createTraceCanvas(host, { kind: 'ahead', marginPx });
+  const active = createTraceCanvas(host, { kind: 'close' });
 
   function schedule(): void {
     if (scheduled === 0) scheduled = requestAnimationFrame(drawFrame);

@@ -2,6 +2,7 @@ import { StaticCanvas } from 'fabric';
 import type { Viewport } from '../model/viewport.ts';
 import { createFabricScene } from './fabric-sink.ts';
 import type { SceneItem } from './scene.ts';
+import { commonPart, holdsPart, partOfItems, type ScreenPart } from './screen-part.ts';
 
 /** A pan slower than this in one step says nothing about where it is going. */
 const HEADING_FROM_PX = 1;
@@ -17,14 +18,20 @@ export type TraceCanvas = {
   destroy(): void;
 };
 
-type Drawn = { readonly view: Viewport; readonly aheadX: number; readonly aheadY: number };
+/**
+ * How much of the screen a canvas covers. `ahead`: so many pixels beyond the view's edges, so that a pan only moves it
+ * until what lies there is used up. `close`: no more than what is drawn needs.
+ */
+export type Cover = { readonly kind: 'ahead'; readonly marginPx: number } | { readonly kind: 'close' };
+
+type Drawn = { readonly view: Viewport; readonly part: ScreenPart };
 
 /**
  * A canvas of fabric's over the tiles. With software rendering drawing a canvas and handing it over takes the main
- * thread several milliseconds, so it is drawn `marginPx` beyond the view's edges, a pan only moves it, and when it
- * must be drawn again the margin lies in the direction of the pan.
+ * thread several milliseconds, more the larger it is. So one that is drawn seldom is drawn ahead, with the margin in
+ * the direction of the pan, and one that is drawn in every frame of a drag is no larger than what is in it.
  */
-export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCanvas {
+export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas {
   const element = host.ownerDocument.createElement('canvas');
   element.setAttribute('aria-hidden', 'true');
   Object.assign(element.style, { position: 'absolute', left: '0', top: '0', willChange: 'transform' });
@@ -32,30 +39,48 @@ export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCan
   element.style.pointerEvents = 'none';
   host.append(element);
   const fabric = new StaticCanvas(element, { renderOnAddRemove: false, enableRetinaScaling: true });
-  const showItems = createFabricScene(fabric);
+  const showOnCanvas = createFabricScene(fabric);
+  const marginPx = cover.kind === 'ahead' ? cover.marginPx : 0;
+  let items: readonly SceneItem[] = [];
   let view: Viewport | null = null;
   let drawn: Drawn | null = null;
   let heading: readonly [number, number] = [0, 0];
 
-  /** Where what is drawn lies now, from the view's corner. */
-  function shift(from: Drawn, now: Viewport): readonly [number, number] {
-    const scale = now.zoom / from.view.zoom;
-    return [
-      (from.view.origin[0] - now.origin[0]) * now.zoom - (marginPx + from.aheadX) * scale,
-      (from.view.origin[1] - now.origin[1]) * now.zoom - (marginPx + from.aheadY) * scale,
-    ];
+  /** Where what is drawn lies now. */
+  function placeOf({ view: from, part }: Drawn, now: Viewport): ScreenPart {
+    const scale = now.zoom / from.zoom;
+    return {
+      x: (from.origin[0] - now.origin[0]) * now.zoom + part.x * scale,
+      y: (from.origin[1] - now.origin[1]) * now.zoom + part.y * scale,
+      width: part.width * scale,
+      height: part.height * scale,
+    };
   }
 
-  function covers(from: Drawn, now: Viewport): boolean {
+  /** What has to be drawn at least for a view; null when nothing of the items is in it. */
+  function neededFor(now: Viewport): ScreenPart | null {
+    const whole = { x: 0, y: 0, width: now.widthPx, height: now.heightPx };
+    return cover.kind === 'close' ? commonPart(partOfItems(items, now), whole) : whole;
+  }
+
+  function isCovered(from: Drawn, now: Viewport): boolean {
     const { zoom, widthPx, heightPx } = from.view;
     if (zoom !== now.zoom || widthPx !== now.widthPx || heightPx !== now.heightPx) return false;
-    return shift(from, now).every((edge) => edge <= 0 && edge >= -2 * marginPx);
+    const needed = neededFor(now);
+    return needed === null || holdsPart(placeOf(from, now), needed);
   }
 
   function move(from: Drawn, now: Viewport): void {
-    const [x, y] = shift(from, now);
+    const { x, y } = placeOf(from, now);
     const scale = now.zoom / from.view.zoom;
     element.style.transform = `translate(${x}px, ${y}px)${scale === 1 ? '' : ` scale(${scale})`}`;
+  }
+
+  function partToDraw(now: Viewport): ScreenPart | null {
+    if (cover.kind === 'close') return neededFor(now);
+    const [x, y] = heading.map((panned) => -marginPx - ahead(panned)) as [number, number];
+    heading = [0, 0];
+    return { x, y, width: now.widthPx + 2 * marginPx, height: now.heightPx + 2 * marginPx };
   }
 
   function ahead(panned: number): number {
@@ -67,34 +92,33 @@ export function createTraceCanvas(host: HTMLElement, marginPx: number): TraceCan
       heading = view === null || view.zoom !== next.zoom ? [0, 0] : panOf(view, next);
       view = next;
       if (fabric.isEmpty()) return drawn !== null;
-      if (drawn === null || !(zooming || covers(drawn, next))) return true;
+      if (drawn === null || !(zooming || isCovered(drawn, next))) return true;
       move(drawn, next);
       return false;
     },
-    showItems,
+    showItems(next) {
+      items = next;
+      return showOnCanvas(next);
+    },
     draw() {
       if (view === null) return;
-      element.style.display = fabric.isEmpty() ? 'none' : '';
-      if (fabric.isEmpty()) {
-        drawn = null;
-        return;
-      }
-      const width = view.widthPx + 2 * marginPx;
-      const height = view.heightPx + 2 * marginPx;
+      const part = fabric.isEmpty() ? null : partToDraw(view);
+      element.style.display = part === null ? 'none' : '';
+      drawn = part === null ? null : { view, part };
+      if (drawn === null || part === null) return;
+      const { width, height } = part;
       if (fabric.width !== width || fabric.height !== height) fabric.setDimensions({ width, height });
-      drawn = { view, aheadX: ahead(heading[0]), aheadY: ahead(heading[1]) };
-      heading = [0, 0];
       const { zoom, origin } = view;
-      const x = -origin[0] * zoom + marginPx + drawn.aheadX;
-      const y = -origin[1] * zoom + marginPx + drawn.aheadY;
-      fabric.setViewportTransform([zoom, 0, 0, zoom, x, y]);
+      fabric.setViewportTransform([zoom, 0, 0, zoom, -origin[0] * zoom - part.x, -origin[1] * zoom - part.y]);
       fabric.renderAll();
       move(drawn, view);
     },
     isOffCentre() {
       if (drawn === null || view === null) return false;
       if (drawn.view.zoom !== view.zoom) return true;
-      return shift(drawn, view).some((edge) => Math.abs(edge + marginPx) > marginPx / 2);
+      if (cover.kind === 'close') return false;
+      const { x, y } = placeOf(drawn, view);
+      return [x, y].some((edge) => Math.abs(edge + marginPx) > marginPx / 2);
     },
     destroy() {
       void fabric.dispose().then(() => element.remove());

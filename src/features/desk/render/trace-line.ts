@@ -2,16 +2,16 @@ import { Polyline } from 'fabric';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { SheetFrame } from '../model/viewport.ts';
 import { type LinePiece, piecesIn } from './clip-line.ts';
+import { drawEndMark } from './end-mark.ts';
 import { frameOfLine } from './line-frame.ts';
-import { COLOURS, type EndMark, HALO } from './line-look.ts';
+import { HALO } from './line-look.ts';
 import type { SceneLine } from './scene.ts';
+import { LINE_REACH_PX } from './screen-part.ts';
 import { framesMeet, holdsFrame, seenBy } from './seen-by.ts';
 
 const STRONGER_PX = 1.2;
 const HATCH_LENGTH_PX = 6;
 const HATCH_PX = 1;
-/** How far marks and hatching reach beyond the line, screen pixels. */
-const REACH_PX = 16;
 
 /** A traced line in sheet pixels, drawn with strokes of constant width on screen and a halo over the scan. */
 export class TraceLine extends Polyline {
@@ -32,7 +32,7 @@ export class TraceLine extends Polyline {
 
   override render(context: CanvasRenderingContext2D): void {
     const zoom = this.canvas?.viewportTransform[0] ?? 1;
-    const seen = seenBy(this.canvas, REACH_PX);
+    const seen = seenBy(this.canvas, LINE_REACH_PX);
     if (seen === null || !framesMeet(this.frame, seen)) return;
     const whole: LinePiece[] = [{ points: [...this.item.points], start: 0 }];
     const pieces = holdsFrame(seen, this.frame) ? whole : piecesIn(this.item.points, seen);
@@ -56,7 +56,7 @@ export class TraceLine extends Polyline {
     context.restore();
   }
 
-  /** The marks at both ends, on halos of their own as they reach beyond the line's; those out of sight are left out. */
+  /** The marks at both ends; those out of sight are left out. */
   private endMarks(context: CanvasRenderingContext2D, zoom: number, seen: SheetFrame): void {
     const { points, look } = this.item;
     const [first, last] = [points[0], points.at(-1)];
@@ -64,22 +64,11 @@ export class TraceLine extends Polyline {
     // A water level stands where the water ends: at the upper end of a face, at the start of a phreatic line.
     const level = last[1] < first[1] ? last : first;
     const ends = look.end === 'level' ? [level] : points.length > 1 ? [first, last] : [first];
-    const inSight = ends.filter(([x, y]) => framesMeet([x, y, 0, 0], seen));
-    if (inSight.length === 0) return;
-    const path = new Path2D();
-    for (const end of inSight) {
-      if (look.end === 'level') addLevel(path, end, 1 / zoom);
-      else addEnd(path, look.end, end, (end === first ? points[1] : points.at(-2)) ?? end, 1 / zoom);
+    for (const end of ends) {
+      if (!framesMeet([end[0], end[1], 0, 0], seen)) continue;
+      const next = (end === first ? points[1] : points.at(-2)) ?? end;
+      drawEndMark(context, look.end, end, next, 1 / zoom, look.colour);
     }
-    const widthPx = look.end === 'bar' ? 2 : 1.4;
-    context.globalAlpha = HALO.alpha;
-    strokePath(context, path, HALO.colour, widthPx + HALO.widthPx, zoom);
-    context.globalAlpha = 1;
-    if (look.end !== 'bar' && look.end !== 'level') {
-      context.fillStyle = look.end === 'dot' ? look.colour : COLOURS.film;
-      context.fill(path);
-    }
-    if (look.end !== 'dot') strokePath(context, path, look.colour, widthPx, zoom);
   }
 }
 
@@ -144,32 +133,4 @@ function ticksOf(pieces: readonly LinePiece[], spacing: number, length: number, 
     }
   }
   return path;
-}
-
-function addLevel(path: Path2D, at: SheetPoint, px: number): void {
-  path.moveTo(at[0], at[1] - 2 * px);
-  path.lineTo(at[0] - 5 * px, at[1] - 10 * px);
-  path.lineTo(at[0] + 5 * px, at[1] - 10 * px);
-  path.closePath();
-}
-
-function addEnd(
-  path: Path2D,
-  mark: Exclude<EndMark, 'none' | 'level'>,
-  at: SheetPoint,
-  next: SheetPoint,
-  px: number,
-): void {
-  if (mark === 'bar') {
-    const length = Math.hypot(next[0] - at[0], next[1] - at[1]) || 1;
-    const nx = (-(next[1] - at[1]) / length) * 4 * px;
-    const ny = ((next[0] - at[0]) / length) * 4 * px;
-    path.moveTo(at[0] - nx, at[1] - ny);
-    path.lineTo(at[0] + nx, at[1] + ny);
-  } else if (mark === 'square') {
-    path.rect(at[0] - 3.2 * px, at[1] - 3.2 * px, 6.4 * px, 6.4 * px);
-  } else {
-    path.moveTo(at[0] + 3 * px, at[1]);
-    path.arc(at[0], at[1], 3 * px, 0, 2 * Math.PI);
-  }
 }
