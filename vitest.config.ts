@@ -3,14 +3,16 @@ import { defineConfig } from 'vitest/config';
 /** Tests that need a database say so in their name or lie in a folder whose tests all do. */
 const WITH_DATABASE = ['tests/api/**/*.test.ts', 'tests/contract/**/*.test.ts', 'tests/**/*.db.test.ts'];
 const BROWSER = ['tests/e2e/**/*.test.ts'];
+/** What is timed in seconds needs the machine to itself. */
+const ALONE = ['tests/e2e/start/start.test.ts'];
 
 export default defineConfig({
   test: {
     // A start of PostgreSQL or the first load of a big package on a busy machine takes much longer than the usual 5 s.
     testTimeout: 60_000,
     hookTimeout: 120_000,
-    // One more than the cores: tests of the API wait for the database and for files a part of their time.
-    maxWorkers: 3,
+    // More than the cores: tests of the API wait for the database and for files a part of their time.
+    maxWorkers: 4,
     projects: [
       {
         extends: true,
@@ -28,6 +30,7 @@ export default defineConfig({
           name: 'api',
           include: WITH_DATABASE,
           globalSetup: ['tests/support/cluster.ts'],
+          // As for the unit tests.
           isolate: false,
         },
       },
@@ -36,11 +39,21 @@ export default defineConfig({
         test: {
           name: 'e2e',
           include: BROWSER,
+          exclude: ALONE,
           globalSetup: ['tests/support/cluster.ts', 'tests/support/built-client.ts'],
-          // One browser and one server at a time: on two cores a second pair only makes both slow.
-          fileParallelism: false,
-          // After the others, so that what is timed in a browser has the machine to itself.
+          // One browser and one server for each core, and after the others.
+          maxWorkers: 2,
           sequence: { groupOrder: 1 },
+          testTimeout: 120_000,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'start',
+          include: ALONE,
+          globalSetup: ['tests/support/built-client.ts'],
+          sequence: { groupOrder: 2 },
           testTimeout: 120_000,
         },
       },

@@ -12,7 +12,7 @@ import { closingLine, countOf } from './test-count.mjs';
 
 /**
  * Every check of the project, on a machine that may have nothing but Node. Given names of test projects
- * (unit, api, e2e), only those run, without the type check and the lint.
+ * (unit, api, e2e, start), only those run, without the type check and the lint.
  */
 await live(storageDirOf(process.env), async (life) => {
   const projects = process.argv.slice(2);
