@@ -2,11 +2,14 @@ import type { ErrorRequestHandler, Request } from 'express';
 import { AppError } from '#server/errors/app-error.ts';
 import type { Problem } from '#shared/contract/problem.ts';
 
-/** Errors that body parsers throw carry a status and are the sender's fault. */
-function fromParser(error: unknown): AppError | null {
+/** Errors that body parsers and the files' handler throw carry a status and are the asker's fault. */
+function fromStatus(error: unknown): AppError | null {
   if (!(error instanceof Error) || !('status' in error) || typeof error.status !== 'number') return null;
   if (error.status === 413)
     return new AppError('too-large', 413, 'Too large', 'The request is larger than this address takes.');
+  // A script of a build that is gone, asked for by a page from before it.
+  if (error.status === 404)
+    return new AppError('not-found', 404, 'Not found', 'There is nothing at this address. Load the page again.');
   if (error.status >= 400 && error.status < 500)
     return new AppError('invalid-input', 400, 'Unreadable request', 'The request could not be read as JSON.');
   return null;
@@ -52,7 +55,7 @@ function fromUnknown(error: unknown): AppError {
 
 export function toAppError(error: unknown): AppError {
   if (error instanceof AppError) return error;
-  return fromParser(error) ?? fromFullDisk(error) ?? fromUnstorableText(error) ?? fromUnknown(error);
+  return fromStatus(error) ?? fromFullDisk(error) ?? fromUnstorableText(error) ?? fromUnknown(error);
 }
 
 function toProblem(error: AppError, req: Request): Problem {

@@ -1,6 +1,7 @@
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { SheetPoint } from '#shared/contract/document.ts';
+import { axeFaults } from '#tests/support/axe.ts';
 import { apronScan, equipotential } from '#tests/support/journey/apron-sheet.ts';
 import { takeDesk } from '#tests/support/journey/desk-hand.ts';
 import { allSaved, cell } from '#tests/support/journey/desk-steps.ts';
@@ -173,9 +174,11 @@ describe('two engineers on one net', () => {
     await allSaved(other);
     await page.context().setOffline(false);
     await page.getByText(/was changed by R. Okafor meanwhile/).waitFor();
+    expect(await axeFaults(page, 'desk, a change refused')).toEqual([]);
     await page.getByRole('button', { name: 'Compare' }).click();
     const dialog = page.getByRole('dialog', { name: 'Changed by two people' });
     await dialog.getByRole('img', { name: 'Both versions, one over the other' }).waitFor();
+    expect(await axeFaults(page, 'changed by two people')).toEqual([]);
     await dialog.getByRole('button', { name: 'Keep both, mine as a copy' }).click();
     await dialog.getByRole('button', { name: 'Close' }).click();
     await expect.poll(async () => (await lines()).length, WITHIN).toBe(3);

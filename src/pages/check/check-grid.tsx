@@ -19,57 +19,89 @@ interface CheckGridProps {
   onPane: (pane: CheckPane) => void;
 }
 
-/** Sheet and schedule as on the desk; in the margin the check, the notes and the title block. */
+/** With room for three columns the check stands at the left, where the tools are on the desk. */
+const ROOMY = '(min-width: 1080px)';
+
+/**
+ * Sheet and schedule as on the desk; in the margin the check, the notes and the title block. All layouts are the same
+ * elements in other places: what is typed of a decision stays when a tablet is turned.
+ */
 export function CheckGrid(props: CheckGridProps) {
+  const { narrow, pane, onPane } = props;
+  const roomy = useMedia(ROOMY);
+  const look = narrow ? narrowLook(pane) : roomy ? ROOMY_LOOK : CLOSE_LOOK;
   return (
     <main id="content" className="flex min-h-0 flex-1 flex-col">
       <h1 className="sr-only">{props.heading}</h1>
-      {props.narrow ? <NarrowGrid {...props} /> : <WideGrid {...props} />}
+      <div className={`grid min-h-0 flex-1 grid-rows-[minmax(0,1fr)_auto] ${look.grid}`}>
+        <div className={look.middle}>
+          <div className={look.sheet}>{props.sheet}</div>
+          <div className={look.schedule}>{props.schedule}</div>
+        </div>
+        <aside className={look.margin}>
+          <div className={look.scrolled}>
+            <div className={look.check}>{props.check}</div>
+            <div className={look.notes}>{props.notes}</div>
+          </div>
+          <div className={look.block}>{props.block}</div>
+        </aside>
+      </div>
+      {narrow ? <PaneSwitch panes={PANES} names={text.panes} pane={pane} onPane={onPane} /> : null}
     </main>
   );
 }
 
-/** With room for three columns the check stands at the left, where the tools are on the desk. */
-const ROOMY = '(min-width: 1080px)';
+type Look = Readonly<
+  Record<
+    'grid' | 'middle' | 'sheet' | 'schedule' | 'margin' | 'scrolled' | 'check' | 'notes' | 'block',
+    string
+  >
+>;
 
-function WideGrid({ sheet, schedule, notes, block, check }: CheckGridProps) {
-  const roomy = useMedia(ROOMY);
-  const columns = roomy
-    ? 'grid-cols-[270px_minmax(0,1fr)_340px] xl:grid-cols-[280px_minmax(0,1fr)_372px]'
-    : 'grid-cols-[minmax(0,1fr)_320px]';
-  return (
-    <div className={`grid min-h-0 flex-1 grid-rows-[minmax(0,1fr)_232px] ${columns}`}>
-      {roomy ? (
-        <div className="row-span-2 min-h-0 overflow-y-auto border-r border-rule bg-film">{check}</div>
-      ) : null}
-      <div className="flex min-h-0 min-w-0 flex-col">{sheet}</div>
-      <aside className="row-span-2 flex min-h-0 flex-col border-l-[1.5px] border-ink bg-film">
-        <div className="flex min-h-0 flex-1 flex-col overflow-y-auto">
-          {roomy ? null : <div className="shrink-0 border-b border-rule">{check}</div>}
-          {notes}
-        </div>
-        <div className="max-h-[60%] shrink-0 overflow-y-auto">{block}</div>
-      </aside>
-      <div className="min-h-0 min-w-0 border-t border-rule">{schedule}</div>
-    </div>
-  );
-}
+const BOTH_ROWS = 'row-start-1 row-end-3 min-h-0 min-w-0';
+const SHEET_OVER_SCHEDULE = {
+  sheet: 'flex min-h-0 min-w-0 flex-1 flex-col',
+  schedule: 'h-[232px] min-w-0 shrink-0 border-t border-rule',
+};
 
-function NarrowGrid({ sheet, schedule, notes, block, check, pane, onPane }: CheckGridProps) {
-  const place = (own: CheckPane) =>
-    classNames('col-start-1 row-start-1 flex min-h-0 min-w-0 flex-col', pane !== own && 'invisible');
-  return (
-    <>
-      <div className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)] grid-rows-[minmax(0,1fr)]">
-        <div className={place('sheet')}>{sheet}</div>
-        <div className={place('schedule')}>{schedule}</div>
-        <div className={classNames(place('notes'), 'bg-film')}>{notes}</div>
-        <div className={classNames(place('check'), 'overflow-y-auto bg-film')}>
-          {check}
-          {block}
-        </div>
-      </div>
-      <PaneSwitch panes={PANES} names={text.panes} pane={pane} onPane={onPane} />
-    </>
-  );
+const ROOMY_LOOK: Look = {
+  ...SHEET_OVER_SCHEDULE,
+  grid: 'grid-cols-[270px_minmax(0,1fr)_340px] xl:grid-cols-[280px_minmax(0,1fr)_372px]',
+  middle: `col-start-2 flex flex-col ${BOTH_ROWS}`,
+  margin: 'contents',
+  scrolled: 'contents',
+  check: `col-start-1 overflow-y-auto border-r border-rule bg-film ${BOTH_ROWS}`,
+  notes: 'col-start-3 row-start-1 flex min-h-0 flex-col overflow-y-auto border-l-[1.5px] border-ink bg-film',
+  block: 'col-start-3 row-start-2 max-h-[55dvh] overflow-y-auto border-l-[1.5px] border-ink bg-film',
+};
+
+const CLOSE_LOOK: Look = {
+  ...SHEET_OVER_SCHEDULE,
+  grid: 'grid-cols-[minmax(0,1fr)_320px]',
+  middle: `col-start-1 flex flex-col ${BOTH_ROWS}`,
+  margin: `col-start-2 flex flex-col border-l-[1.5px] border-ink bg-film ${BOTH_ROWS}`,
+  scrolled: 'flex min-h-0 flex-1 flex-col overflow-y-auto',
+  check: 'shrink-0 border-b border-rule',
+  notes: 'contents',
+  block: 'max-h-[60%] shrink-0 overflow-y-auto',
+};
+
+/** One part at a time; those not shown keep their size, so that the sheet keeps its view. The block goes with the check. */
+function narrowLook(shown: CheckPane): Look {
+  const place = (own: CheckPane, className: string) =>
+    classNames('col-start-1 flex flex-col', BOTH_ROWS, className, shown !== own && 'invisible');
+  return {
+    grid: 'grid-cols-[minmax(0,1fr)]',
+    middle: 'contents',
+    sheet: place('sheet', ''),
+    schedule: place('schedule', ''),
+    margin: 'contents',
+    scrolled: 'contents',
+    check: classNames(
+      'col-start-1 row-start-1 min-h-0 min-w-0 overflow-y-auto bg-film',
+      shown !== 'check' && 'invisible',
+    ),
+    notes: place('notes', 'bg-film'),
+    block: shown === 'check' ? 'col-start-1 row-start-2 max-h-[40dvh] overflow-y-auto bg-film' : 'hidden',
+  };
 }

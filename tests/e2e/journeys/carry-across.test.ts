@@ -3,6 +3,7 @@ import sharp from 'sharp';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { entitiesOf, type SheetPoint } from '#shared/contract/document.ts';
 import { netDetailDto } from '#shared/contract/nets.ts';
+import { axeFaults } from '#tests/support/axe.ts';
 import { takeDesk } from '#tests/support/journey/desk-hand.ts';
 import { allSaved } from '#tests/support/journey/desk-steps.ts';
 import { addDrawings, openNewNet } from '#tests/support/journey/drawing-steps.ts';
@@ -87,6 +88,7 @@ describe('a new scan of a drawing', () => {
       await page.keyboard.up('Control');
     }
     await page.getByText(/is off the most, by \d+\.\d px/).waitFor();
+    expect(await axeFaults(page, 'carry across, places marked')).toEqual([]);
     await page.getByRole('button', { name: 'Carry across' }).click();
     await page.getByText('C–C is on the new sheet.').waitFor();
 

@@ -1,6 +1,7 @@
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { SheetPoint } from '#shared/contract/document.ts';
+import { axeFaults } from '#tests/support/axe.ts';
 import { apronScan, equipotential, flowLine } from '#tests/support/journey/apron-sheet.ts';
 import { takeDesk } from '#tests/support/journey/desk-hand.ts';
 import { allSaved } from '#tests/support/journey/desk-steps.ts';
@@ -42,6 +43,7 @@ describe('what is traced is kept', () => {
     await page.context().setOffline(true);
     await traceLine('e', equipotential(1));
     await page.getByText(/kept in this browser/).waitFor();
+    expect(await axeFaults(page, 'desk, without a connection')).toEqual([]);
     expect(await linesOnServer()).toBe(0);
     await page.context().setOffline(false);
     await allSaved(page);
@@ -92,6 +94,7 @@ describe('what is traced is kept', () => {
       flowLine(2).filter((_, i) => i % 7 === 0),
     );
     await page.getByRole('dialog', { name: 'Sign in again' }).waitFor();
+    expect(await axeFaults(page, 'desk, signing in again')).toEqual([]);
     await page.getByLabel('Password').fill(world.engineer.password);
     await page.getByRole('button', { name: 'Sign in', exact: true }).click();
     await expect.poll(linesOnServer, { timeout: 20_000 }).toBe(4);

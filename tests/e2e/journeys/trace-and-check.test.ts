@@ -4,6 +4,7 @@ import type { ParsedMail } from 'mailparser';
 import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { DESKTOP, PHONE } from '#tests/support/browser.ts';
 import {
   apronScan,
   DROPS,
@@ -213,6 +214,11 @@ describe('from a scan to a decision', () => {
     await tick('Title block, Drops Nd').check();
     await reviewer.getByText(/^3 of \d+ ticked$/).waitFor();
     for (const yes of await reviewer.getByRole('radio', { name: 'Yes' }).all()) await yes.check();
+    // What is typed of the decision stays when a tablet is turned.
+    await reviewer.setViewportSize({ width: 820, height: 1180 });
+    await reviewer.setViewportSize(PHONE);
+    await reviewer.setViewportSize(DESKTOP);
+    expect(await reviewer.getByLabel('Your password, to sign').inputValue()).toBe(world.reviewer.password);
     await reviewer.getByText('13 of 13 answered').waitFor();
     // Kept on the server: another visit finds them.
     await expect

@@ -1,5 +1,6 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { OutboxMailEntity } from '#server/entities/mail-entity.ts';
+import { digestStopPage, digestStopToken } from '#server/services/digest-link.ts';
 import { openBrowser, type TestBrowser } from '#tests/support/browser.ts';
 import { type RealServer, startRealServer } from '#tests/support/real-server.ts';
 import { addDam, addMember, addPerson, type TestPerson } from '#tests/support/test-people.ts';
@@ -263,5 +264,23 @@ describe('people', () => {
     await other.goto('/');
     await signIn(other, leaver);
     await other.getByText('do not belong together').waitFor();
+  });
+
+  it('who follow the link of their digest stop it by one press, without a sign-in', async () => {
+    const reader = await addPerson(server.db, 'Reads Daily');
+    const timing = async () => {
+      const query = 'SELECT mail_timing AS timing FROM person WHERE id = $1';
+      return (await server.db.query(query, [reader.id]))[0].timing;
+    };
+    await server.db.query("UPDATE person SET mail_timing = 'daily' WHERE id = $1", [reader.id]);
+    const config = { publicUrl: server.address, sessionSecret: String(server.env.SESSION_SECRET) };
+    const page = await browser.newPage();
+    await page.goto(digestStopPage(config, digestStopToken(config, reader.id)));
+    const stop = page.getByRole('button', { name: 'Stop the digest' });
+    await stop.waitFor();
+    expect(await timing()).toBe('daily');
+    await stop.click();
+    await page.getByText('The daily digest is stopped.').waitFor();
+    expect(await timing()).not.toBe('daily');
   });
 });

@@ -42,6 +42,14 @@ describe('somebody who opens the address', () => {
   });
 });
 
+describe('a script of an earlier build', () => {
+  it('is answered with 404, and not with the page', async () => {
+    const response = await fetch(`${server.address}/assets/gone-BfdP1DoR.js`);
+    expect(response.status).toBe(404);
+    expect(await response.json()).toMatchObject({ code: 'not-found' });
+  });
+});
+
 describe('the watch over the console', () => {
   it('fails on an error that was not expected and lets an expected one pass', async () => {
     const page = await browser.newPage();
