@@ -9,7 +9,12 @@ function fromStatus(error: unknown): AppError | null {
     return new AppError('too-large', 413, 'Too large', 'The request is larger than this address takes.');
   // A script of a build that is gone, asked for by a page from before it.
   if (error.status === 404)
-    return new AppError('not-found', 404, 'Not found', 'There is nothing at this address. Load the page again.');
+    return new AppError(
+      'not-found',
+      404,
+      'Not found',
+      'There is nothing at this address. Load the page again.',
+    );
   if (error.status >= 400 && error.status < 500)
     return new AppError('invalid-input', 400, 'Unreadable request', 'The request could not be read as JSON.');
   return null;
