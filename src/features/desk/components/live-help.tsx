@@ -1,4 +1,4 @@
-import { type CSSProperties, useEffect, useRef, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { deskViewText } from '#client/text/desk-view.ts';
 import { liveHelpText as text } from '#client/text/tracing-aids.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
@@ -39,11 +39,6 @@ const CHARACTER_PX = 6.6;
 const LINE_PX = 18;
 /** Under the readout of the place, which a narrow sheet shows in its second row; a finger is seldom there. */
 const IN_CORNER = 'translate(12px, 96px)';
-/** Words over the scan are read by a halo of the paper's colour, as the marks on it are. */
-const HALO: CSSProperties = {
-  textShadow: Array.from({ length: 5 }, () => '0 0 2px var(--color-film)').join(', '),
-};
-
 const ROW: RowOf = { tag: 'p', className: 'm-0 leading-[18px]' };
 
 function Beside({ store, views, source, touched }: LiveHelpProps) {
@@ -60,8 +55,8 @@ function Beside({ store, views, source, touched }: LiveHelpProps) {
       hidden
       aria-hidden="true"
       data-live-help
-      className="pointer-events-none absolute top-0 left-0 whitespace-nowrap bg-film/80 text-sm font-semibold will-change-transform"
-      style={HALO}
+      // A ground as strong as the halo of the marks: blurred shadows of letters would be painted anew in every frame.
+      className="pointer-events-none absolute top-0 left-0 whitespace-nowrap bg-film/85 text-sm font-semibold will-change-transform"
     />
   );
 }

@@ -32,12 +32,12 @@ export function profileDiagram({ samples }: Pick<ProfileReading, 'samples'>): Pr
   const greatest = samples.reduce((most, { porePressure }) => Math.max(most, Math.abs(porePressure ?? 0)), 0);
   const length = places.slice(1).reduce((sum, to, i) => sum + distance(places[i]!, to), 0);
   if (!(length > 0) || samples.every(({ porePressure }) => porePressure === null)) return null;
-  const pxPerPressure = greatest > 0 ? (LONGEST * length) / greatest : 0;
   const side = sideOf(places);
   const ordinates = samples.map(({ at, porePressure }, i): Ordinate | null => {
     if (porePressure === null) return null;
     const [nx, ny] = normalAt(places, i);
-    const reach = side * pxPerPressure * porePressure;
+    // The part first: for a greatest pressure near nothing the pixels for a unit of it are no number.
+    const reach = greatest > 0 ? side * LONGEST * length * (porePressure / greatest) : 0;
     return { at, tip: [at[0] + nx * reach, at[1] + ny * reach], pressure: porePressure };
   });
   const runs = runsOf(ordinates);

@@ -69,6 +69,11 @@ describe('the pressure diagram of a profile', () => {
     expect(diagram?.curves.map((curve) => curve.length)).toEqual([2, 2]);
   });
 
+  it('is finite for a pressure near nothing', () => {
+    const diagram = profileDiagram({ samples: [sample([0, 0], 5e-324), sample([100, 0], 0)] });
+    expect(diagram!.curves.flat(2).every(Number.isFinite)).toBe(true);
+  });
+
   it('is finite and no ordinate is longer than a fifth of the profile, however it bends', () => {
     const px = fc.double({ min: -5000, max: 5000, noNaN: true });
     const places = fc.array(fc.tuple(px, px, fc.double({ min: -500, max: 500, noNaN: true })), {
