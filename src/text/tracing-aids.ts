@@ -56,6 +56,7 @@ const enLiveHelpText = {
       ? net
       : `between ${plainText(before, 6)} and ${plainText(after, 6)}, ${net}`;
   },
+  headAwaited: 'Head …',
   noHead: 'No head here by the net read last',
   nothing: 'Nothing under the pointer',
 } as const;

@@ -6,12 +6,20 @@ import type { HeadThere, HelpShown } from '../model/live-help-source.ts';
 
 type Read = Pick<DeskState, 'document' | 'reading' | 'documentRevision'>;
 
-/** What is told of a place while a line is drawn, a line of words for each fact. `place`: its offset and elevation. */
-export function helpWords(shown: HelpShown, place: readonly string[], read: Read): string[] {
+/**
+ * What is told of a place while a line is drawn, a line of words for each fact. `place`: its offset and elevation.
+ * `awaited`: what stands in place of a head that has not been worked out yet.
+ */
+export function helpWords(
+  shown: HelpShown,
+  place: readonly string[],
+  read: Read,
+  awaited: readonly string[] = [],
+): string[] {
   const words = [
     ...(shown.snap === null ? [] : [text.snaps[shown.snap]]),
     ...place,
-    ...headWords(shown.head, read),
+    ...(shown.head === null ? awaited : headWords(shown.head, read)),
     ...angleWords(shown.help),
     ...cellWords(shown.help),
   ];

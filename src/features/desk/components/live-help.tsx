@@ -39,6 +39,9 @@ const CHARACTER_PX = 6.6;
 const LINE_PX = 18;
 /** Under the readout of the place, which a narrow sheet shows in its second row; a finger is seldom there. */
 const IN_CORNER = 'translate(12px, 96px)';
+/** As many rows as a head takes: a box that grows and shrinks under a moving hand jumps, and is laid out anew. */
+const AWAITED = [text.headAwaited, '\u00a0'];
+
 const ROW: RowOf = { tag: 'p', className: 'm-0 leading-[18px]' };
 
 function Beside({ store, views, source, touched }: LiveHelpProps) {
@@ -88,7 +91,7 @@ function keepBeside(element: HTMLElement, { store, views, source, touched }: Liv
 function besideWords(state: DeskState, shown: HelpShown, touched: boolean): string[] {
   // In the corner they stand right under the readout, which tells the place already.
   const place = touched ? [] : wordsOfPlace(shown.at, state.document, setOutOf(state.document));
-  return helpWords(shown, place, state);
+  return helpWords(shown, place, state, state.reading === null ? [] : AWAITED);
 }
 
 /** Beside the pointer where there is room: to its right and below, else to the other side. */

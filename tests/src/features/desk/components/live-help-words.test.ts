@@ -39,6 +39,17 @@ describe('what is told beside the pointer', () => {
     ]);
   });
 
+  it('keeps the rows of a head that is still being worked out, and never a head of another place in them', () => {
+    const awaited = ['Head …', '\u00a0'];
+    expect(helpWords(plain, ['Elevation 98.0 m LD'], read, awaited)).toEqual([
+      'Elevation 98.0 m LD',
+      ...awaited,
+    ]);
+    expect(helpWords({ ...plain, head: { at, of: 7, head: null } }, [], read, awaited)).toEqual([
+      'No head here by the net read last',
+    ]);
+  });
+
   it('names the right angle that is wanted or the departure from it, and leaves other angles out beside it', () => {
     const meetings = [
       { kind: 'submergedFace', angleDeg: 12, wantsRight: false },
