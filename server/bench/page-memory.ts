@@ -56,11 +56,13 @@ async function workForAWhile(desk: Page): Promise<void> {
  * which a note is written on a cell have names of their own.
  */
 async function openEveryForm(desk: Page): Promise<void> {
-  const cells = desk.getByRole('region', { name: 'Title block' }).locator('button[title]:not([aria-label])');
-  const count = await cells.count();
-  if (count < 2) throw new Error('The desk shows no title block.');
-  for (let cell = 1; cell < count; cell++) {
-    await cells.nth(cell).click();
+  const block = desk.getByRole('region', { name: 'Title block' });
+  const cells = block.locator('button[title]:not([aria-label])');
+  // Cells are drawn anew while the net is read again, so that each is found by what it opens.
+  const titles = await cells.evaluateAll((all) => all.map((cell) => cell.getAttribute('title') ?? ''));
+  if (titles.length < 2) throw new Error('The desk shows no title block.');
+  for (const title of new Set(titles.slice(1))) {
+    await block.getByTitle(title, { exact: true }).first().click();
     await desk.keyboard.press('Escape');
   }
 }

@@ -86,22 +86,20 @@ const CLOSE_LOOK: Look = {
   block: 'max-h-[60%] shrink-0 overflow-y-auto',
 };
 
-/** One part at a time; those not shown keep their size, so that the sheet keeps its view. The block goes with the check. */
+/** One part at a time; the sheet keeps its size meanwhile, and so its view. The title block goes with the check. */
 function narrowLook(shown: CheckPane): Look {
-  const place = (own: CheckPane, className: string) =>
-    classNames('col-start-1 flex flex-col', BOTH_ROWS, className, shown !== own && 'invisible');
+  const whole = classNames('col-start-1 flex flex-col', BOTH_ROWS);
+  const place = (own: CheckPane) => classNames(whole, shown !== own && 'invisible');
+  const checking = shown === 'check';
   return {
     grid: 'grid-cols-[minmax(0,1fr)]',
     middle: 'contents',
-    sheet: place('sheet', ''),
-    schedule: place('schedule', ''),
-    margin: 'contents',
+    sheet: place('sheet'),
+    schedule: place('schedule'),
+    margin: checking ? `${whole} overflow-y-auto bg-film` : 'contents',
     scrolled: 'contents',
-    check: classNames(
-      'col-start-1 row-start-1 min-h-0 min-w-0 overflow-y-auto bg-film',
-      shown !== 'check' && 'invisible',
-    ),
-    notes: place('notes', 'bg-film'),
-    block: shown === 'check' ? 'col-start-1 row-start-2 max-h-[40dvh] overflow-y-auto bg-film' : 'hidden',
+    check: checking ? 'shrink-0' : 'hidden',
+    notes: shown === 'notes' ? `${whole} bg-film` : 'hidden',
+    block: checking ? 'shrink-0' : 'hidden',
   };
 }

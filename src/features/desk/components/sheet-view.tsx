@@ -176,8 +176,8 @@ export function SheetView({
             <ZoomBar views={views} />
           </div>
         </div>
-        <div className="flex min-h-0 flex-wrap items-end justify-between gap-2 [&_[data-over-sheet]]:pointer-events-auto">
-          <div className="flex max-h-full flex-col items-start gap-2 overflow-auto">
+        <div className="-m-1 flex min-h-0 flex-wrap items-end justify-between gap-2 overflow-auto p-1 [&_[data-over-sheet]]:pointer-events-auto">
+          <div className="flex flex-col items-start gap-2">
             <HiddenHint store={store} />
             <CrosshairBar
               store={store}
