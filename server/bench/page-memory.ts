@@ -51,8 +51,10 @@ async function workForAWhile(desk: Page): Promise<void> {
   await desk.keyboard.press('Escape');
 }
 
+const LEADS_AWAY = 'Go to the dam';
+
 /**
- * Each cell of the title block opens a form in the margin, the next in its place; the first leads to the dam. The signs by
+ * Each cell of the title block opens a form in the margin, the next in its place; one leads to the dam. The signs by
  * which a note is written on a cell have names of their own.
  */
 async function openEveryForm(desk: Page): Promise<void> {
@@ -61,7 +63,7 @@ async function openEveryForm(desk: Page): Promise<void> {
   // Cells are drawn anew while the net is read again, so that each is found by what it opens.
   const titles = await cells.evaluateAll((all) => all.map((cell) => cell.getAttribute('title') ?? ''));
   if (titles.length < 2) throw new Error('The desk shows no title block.');
-  for (const title of new Set(titles.slice(1))) {
+  for (const title of new Set(titles.filter((each) => each !== LEADS_AWAY))) {
     await block.getByTitle(title, { exact: true }).first().click();
     await desk.keyboard.press('Escape');
   }

@@ -9,8 +9,11 @@ import { paintTiles, wantedTiles } from './tile-painter.ts';
 import { createTileStore, type TileStore } from './tile-store.ts';
 import { createTraceCanvas } from './trace-canvas.ts';
 
-/** Decoded tiles kept: a screen of 4K needs about 60 MB of them. */
-const TILE_MEMORY_BYTES = 160 * 1024 * 1024;
+/**
+ * Decoded tiles kept, a little more than a screen of 4K needs; those in sight stay in any case. The browser keeps pictures
+ * of its own of what is in the page, so that more of them costs the page twice.
+ */
+const TILE_MEMORY_BYTES = 80 * 1024 * 1024;
 const TILE_REQUESTS = 4;
 /** Tiles beyond the view's edge that are fetched ahead of a pan. */
 const AHEAD_TILES = 1;
