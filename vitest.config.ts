@@ -11,8 +11,8 @@ export default defineConfig({
     // A start of PostgreSQL or the first load of a big package on a busy machine takes much longer than the usual 5 s.
     testTimeout: 60_000,
     hookTimeout: 120_000,
-    // More than the cores: tests of the API wait for the database and for files a part of their time.
-    maxWorkers: 4,
+    // One more than the cores: tests of the API wait for the database and for files a part of their time.
+    maxWorkers: 3,
     projects: [
       {
         extends: true,

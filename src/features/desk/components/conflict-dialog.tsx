@@ -56,7 +56,7 @@ function Versions({
   const name = conflict.changedBy ? shortName(conflict.changedBy.name) : null;
   const thing = text.things[(conflict.mine ?? conflict.theirs)?.kind ?? 'line'];
   return (
-    <section aria-label={thing} className="border border-rule">
+    <div className="border border-rule">
       <ConflictPicture conflict={conflict} document={document} />
       <Table caption={thing}>
         <thead>
@@ -81,6 +81,6 @@ function Versions({
         <Button onClick={() => onKeep('mine')}>{text.putMine}</Button>
         {canKeepBoth(conflict) ? <Button onClick={() => onKeep('both')}>{text.keepBoth}</Button> : null}
       </div>
-    </section>
+    </div>
   );
 }
