@@ -82,12 +82,15 @@ async function finishFolder(outFolder: string, format: TileFormat): Promise<void
 
 /** libvips tells nothing while it writes; the number of finished tiles does. */
 function reportProgress(folder: string, total: number, onProgress: (share: number) => void): () => void {
+  let told = 0;
   const timer = setInterval(async () => {
+    // Not there before the first tile and, while the last steps are taken, no more: what was told stands then.
     const written = await readdir(folder).then(
       (names) => names.length,
       () => 0,
     );
-    onProgress(Math.min(1, written / total));
+    told = Math.max(told, Math.min(1, written / total));
+    onProgress(told);
   }, PROGRESS_MS);
   return () => clearInterval(timer);
 }
