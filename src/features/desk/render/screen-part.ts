@@ -1,6 +1,7 @@
 import type { Viewport } from '../model/viewport.ts';
+import { labelWidthPx } from './label-layout.ts';
 import { frameOfLine } from './line-frame.ts';
-import type { SceneItem } from './scene.ts';
+import type { SceneItem, SceneMark } from './scene.ts';
 
 /** An upright part of the screen, in pixels from the view's upper left corner. */
 export type ScreenPart = {
@@ -39,8 +40,14 @@ const down = (px: number) => Math.floor(px / STEP_PX) * STEP_PX;
 function extentOf(item: SceneItem): { frame: readonly [number, number, number, number]; reachPx: number } {
   if (item.shape === 'line') return { frame: frameOfLine(item.points), reachPx: LINE_REACH_PX };
   if (item.shape === 'area') return { frame: frameOfLine(item.outlines.flat()), reachPx: LINE_REACH_PX };
-  const reachPx = item.text === '' ? BARE_MARK_REACH_PX : MARK_REACH_PX;
-  return { frame: [item.at[0], item.at[1], 0, 0], reachPx };
+  return { frame: [item.at[0], item.at[1], 0, 0], reachPx: reachOfMark(item) };
+}
+
+/** A long name reaches farther than most, and would be cut off. */
+function reachOfMark({ text, offsetPx }: SceneMark): number {
+  if (text === '') return BARE_MARK_REACH_PX;
+  const [dx, dy] = offsetPx;
+  return Math.max(MARK_REACH_PX, labelWidthPx(text) + Math.max(Math.abs(dx), Math.abs(dy)));
 }
 
 /** What two parts have in common; null for nothing. */

@@ -58,6 +58,12 @@ describe('the part of the screen that items are drawn on', () => {
     expect(named.width).toBeGreaterThan(bare.width);
   });
 
+  it('holds a name however long it is', () => {
+    const short = partOfItems([mark([500, 500], 'P1')], view(1, 0, 0))!;
+    const long = partOfItems([mark([500, 500], 'P1, standpipe in the shell '.repeat(4))], view(1, 0, 0))!;
+    expect(long.width).toBeGreaterThan(short.width);
+  });
+
   it('keeps its size while something in it moves by a pixel, most of the time', () => {
     const sizes = new Set<string>();
     for (let x = 0; x < 60; x += 1) {
