@@ -8,6 +8,7 @@ import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import type { HelpShown, LiveHelpSource } from '../model/live-help-source.ts';
 import type { ViewStore } from '../model/view-store.ts';
 import { sheetZoom, toScreen, type Viewport } from '../model/viewport.ts';
+import { movedLayer } from '../render/moved-layer.ts';
 import { onceAFrame } from '../render/once-a-frame.ts';
 import { headWords, helpWords } from './live-help-words.ts';
 import { setOutOf, wordsAt } from './pointer-readout.tsx';
@@ -38,7 +39,7 @@ const AWAY_PX = 18;
 const CHARACTER_PX = 6.6;
 const LINE_PX = 18;
 /** Under the readout of the place, which a narrow sheet shows in its second row; a finger is seldom there. */
-const IN_CORNER = 'translate(12px, 96px)';
+const IN_CORNER: BesidePlace = { transform: 'translate(12px, 96px)', side: 'flex-start' };
 /** As many rows as a head takes: a box that grows and shrinks under a moving hand jumps, and is laid out anew. */
 const AWAITED = [text.headAwaited, '\u00a0'];
 
@@ -52,27 +53,37 @@ function Beside({ store, views, source, touched }: LiveHelpProps) {
     [store, views, source, touched],
   );
   return (
-    // Said aloud at every movement it would drown everything else; Q tells it.
+    // Said aloud at every movement it would drown everything else; Q tells it. What moves is apart from what is written, of
+    // which the frame keeps its size: else the browser would lay out the page and all its layers anew in every frame.
     <div
       ref={element}
       hidden
       aria-hidden="true"
       data-live-help
-      // A ground as strong as the halo of the marks: blurred shadows of letters would be painted anew in every frame.
-      className="pointer-events-none absolute top-0 left-0 whitespace-nowrap bg-film/85 text-sm font-semibold will-change-transform"
-    />
+      className="pointer-events-none absolute top-0 left-0 will-change-transform"
+    >
+      <div className="flex h-44 w-md flex-col items-start bg-[linear-gradient(transparent,transparent)] text-sm font-semibold whitespace-nowrap contain-layout contain-size">
+        {/* A ground as strong as the halo of the marks: blurred shadows of letters would be painted anew in every frame. */}
+        <div className="bg-film/85" />
+      </div>
+    </div>
   );
 }
 
-/** Keeps what is told beside the pointer written in an element, and the element beside the pointer, until it is ended. */
+/** Keeps what is told beside the pointer written within an element, and that beside the pointer, until it is ended. */
 function keepBeside(element: HTMLElement, { store, views, source, touched }: LiveHelpProps): () => void {
+  const moveTo = movedLayer(element);
   const frame = onceAFrame(() => {
     const { shown } = source.state.getState();
     const words = shown === null ? [] : besideWords(store.getState(), shown, touched);
     element.hidden = words.length === 0;
-    if (shown === null || words.length === 0) return;
-    writeRows(element, ROW, words);
-    element.style.transform = touched ? IN_CORNER : besidePlace(views.getState().view, shown.at, words);
+    const framed = element.firstElementChild;
+    const rows = framed?.firstElementChild;
+    if (shown === null || words.length === 0 || !(framed instanceof HTMLElement) || !rows) return;
+    writeRows(rows, ROW, words);
+    const { transform, side } = touched ? IN_CORNER : besidePlace(views.getState().view, shown.at, words);
+    moveTo(transform);
+    framed.style.alignItems = side;
   });
   const endings = [
     source.state.subscribe(frame.due),
@@ -94,15 +105,21 @@ function besideWords(state: DeskState, shown: HelpShown, touched: boolean): stri
   return helpWords(shown, place, state, state.reading === null ? [] : AWAITED);
 }
 
+/** `side`: at which side of the element its words stand. */
+type BesidePlace = { readonly transform: string; readonly side: 'flex-start' | 'flex-end' };
+
 /** Beside the pointer where there is room: to its right and below, else to the other side. */
-function besidePlace(view: Viewport, at: SheetPx, words: readonly string[]): string {
+function besidePlace(view: Viewport, at: SheetPx, words: readonly string[]): BesidePlace {
   const [x, y] = toScreen(view, at);
   const height = words.length * LINE_PX;
   const width = CHARACTER_PX * Math.max(...words.map((line) => line.length));
   const flipped = x + AWAY_PX + width > view.widthPx && x - AWAY_PX - width > 0;
   const left = flipped ? `calc(${Math.round(x - AWAY_PX)}px - 100%)` : `${Math.round(x + AWAY_PX)}px`;
   const top = y + AWAY_PX + height > view.heightPx ? y - AWAY_PX - height : y + AWAY_PX;
-  return `translate(${left}, ${Math.round(Math.max(4, top))}px)`;
+  return {
+    transform: `translate(${left}, ${Math.round(Math.max(4, top))}px)`,
+    side: flipped ? 'flex-end' : 'flex-start',
+  };
 }
 
 /** Tells, when it is asked, what stands at the pointer. */

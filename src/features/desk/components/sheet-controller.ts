@@ -26,6 +26,7 @@ import {
   type SceneInput,
 } from '../render/build-scene.ts';
 import { createGridLayer } from '../render/grid-layer.ts';
+import { onceAFrame } from '../render/once-a-frame.ts';
 import { overlayScene } from '../render/overlay-scene.ts';
 import { LABEL_PREFIX, type WordPlaces } from '../render/place-words.ts';
 import { rulerItems } from '../render/ruler-items.ts';
@@ -84,6 +85,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let overlay: ToolOverlay = NO_OVERLAY;
   let fingerHolds = false;
   let sceneDue = false;
+  const frame = onceAFrame(() => (sceneDue ? showScene() : showOverlay()), 'scene');
   let scene: readonly SceneItem[] = [];
   /** Labels for which there is no room, by their ids. */
   let crowded: ReadonlyMap<string, SceneItem> = new Map();
@@ -168,11 +170,10 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     grid.show(settingOutAids.getState().showsGrid ? host.map() : null, view());
   }
 
-  /** One scene for all that changes in the same turn. */
+  /** One scene for all that changes in a frame; it brings along what is under the pointer. */
   function dueScene(): void {
-    if (sceneDue) return;
     sceneDue = true;
-    queueMicrotask(() => sceneDue && showScene());
+    frame.due();
   }
 
   function showOverlay(): void {
@@ -208,8 +209,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   function followPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void {
     pointer = at === null ? null : { at, keys, view };
     store.setPointer(at === null ? null : [at[0], at[1]]);
-    // A scene that is due brings it along.
-    if (!sceneDue) showOverlay();
+    frame.due();
   }
 
   function holdByFinger(at: ScreenPx | null): void {
@@ -230,8 +230,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   /** A move by arrow keys of which the end is not heard, as when the window is left with the key held. */
   const settle = () => store.requestEdit({ type: 'settle' });
 
-  ink.onLook(() => pointer !== null && showOverlay());
-  crossings.onLook(() => pointer !== null && showOverlay());
+  ink.onLook(() => pointer !== null && frame.due());
+  crossings.onLook(() => pointer !== null && frame.due());
   const hand = createCrosshairHand({
     element,
     store,
@@ -263,12 +263,12 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     store.subscribe(({ pendingEdit }, before) => {
       if (pendingEdit !== null && pendingEdit !== before.pendingEdit) element.focus({ preventScroll: true });
     }),
-    drawingWayChoice.subscribe(() => showOverlay()),
+    drawingWayChoice.subscribe(frame.due),
     settingOutAids.subscribe(() => {
-      showOverlay();
+      frame.due();
       showGrid();
     }),
-    rulerOf(store).subscribe(() => showOverlay()),
+    rulerOf(store).subscribe(frame.due),
     store.onLookAt((at) => views.lookAt(sheetPx(...at))),
     views.subscribe((state, before) => {
       renderer.setView(state.view);
@@ -292,7 +292,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     },
     act: (type) => host.handle({ type }, keyView()),
     destroy() {
-      sceneDue = false;
+      frame.end();
       sizes.disconnect();
       ink.close();
       crossings.close();

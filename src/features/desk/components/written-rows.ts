@@ -2,7 +2,7 @@
  * Writes rows of words into an element, and of those only what differs. For what follows the pointer: React takes longer
  * to compare and commit a few words than a frame can spare.
  */
-export function writeRows(element: HTMLElement, row: RowOf, words: readonly string[]): void {
+export function writeRows(element: Element, row: RowOf, words: readonly string[]): void {
   while (element.childElementCount > words.length) element.lastElementChild?.remove();
   while (element.childElementCount < words.length) {
     const child = element.ownerDocument.createElement(row.tag);

@@ -44,22 +44,22 @@ export function clippedPart(a: SheetPoint, b: SheetPoint, frame: SheetFrame): [n
   const [left, top, width, height] = frame;
   const dx = b[0] - a[0];
   const dy = b[1] - a[1];
+  // Nothing is made on the way: this is asked of every segment in every frame that is drawn.
+  if (dx === 0 && (a[0] < left || a[0] > left + width)) return null;
+  if (dy === 0 && (a[1] < top || a[1] > top + height)) return null;
   let from = 0;
   let to = 1;
-  const edges: ReadonlyArray<readonly [number, number]> = [
-    [-dx, a[0] - left],
-    [dx, left + width - a[0]],
-    [-dy, a[1] - top],
-    [dy, top + height - a[1]],
-  ];
-  for (const [direction, distance] of edges) {
-    if (direction === 0) {
-      if (distance < 0) return null;
-      continue;
-    }
-    const t = distance / direction;
-    if (direction < 0) from = Math.max(from, t);
-    else to = Math.min(to, t);
+  if (dx !== 0) {
+    const atLeft = (left - a[0]) / dx;
+    const atRight = (left + width - a[0]) / dx;
+    from = Math.max(from, Math.min(atLeft, atRight));
+    to = Math.min(to, Math.max(atLeft, atRight));
+  }
+  if (dy !== 0) {
+    const atTop = (top - a[1]) / dy;
+    const atBottom = (top + height - a[1]) / dy;
+    from = Math.max(from, Math.min(atTop, atBottom));
+    to = Math.min(to, Math.max(atTop, atBottom));
   }
   return from <= to ? [from, to] : null;
 }

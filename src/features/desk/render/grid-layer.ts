@@ -3,6 +3,7 @@ import type { SectionMap } from '#shared/compute/section-map.ts';
 import { decimalsOf, type GridLine, sectionGridOf } from '../model/section-grid.ts';
 import type { Viewport } from '../model/viewport.ts';
 import { COLOURS, HALO } from './line-look.ts';
+import { onceAFrame } from './once-a-frame.ts';
 
 const FONT = '12px "Public Sans", "Liberation Sans", Arial, sans-serif';
 /** As pale as it may be to be told from dark and from pale ground, with its halo of film. */
@@ -18,10 +19,9 @@ export type GridLayer = {
 export function createGridLayer(host: HTMLElement): GridLayer {
   let canvas: HTMLCanvasElement | null = null;
   let wanted: { map: SectionMap; view: Viewport } | null = null;
-  let scheduled = 0;
+  const frame = onceAFrame(draw);
 
   function draw(): void {
-    scheduled = 0;
     if (wanted === null) {
       canvas?.remove();
       canvas = null;
@@ -35,10 +35,10 @@ export function createGridLayer(host: HTMLElement): GridLayer {
     show(map, view) {
       if (map === null && wanted === null) return;
       wanted = map === null ? null : { map, view };
-      if (scheduled === 0) scheduled = requestAnimationFrame(draw);
+      frame.due();
     },
     destroy() {
-      cancelAnimationFrame(scheduled);
+      frame.end();
       canvas?.remove();
       canvas = null;
     },

@@ -17,8 +17,10 @@ export function paintMagnified(
   shown: { document: FlowNetDocument; preview: Readonly<Record<string, DocumentEntity>> },
 ): void {
   const ratio = globalThis.devicePixelRatio || 1;
-  canvas.width = Math.round(view.widthPx * ratio);
-  canvas.height = Math.round(view.heightPx * ratio);
+  const width = Math.round(view.widthPx * ratio);
+  const height = Math.round(view.heightPx * ratio);
+  // Told a size, even the one it has, a canvas begins anew and the page is laid out.
+  if (canvas.width !== width || canvas.height !== height) Object.assign(canvas, { width, height });
   const context = canvas.getContext('2d', { alpha: false });
   if (context === null) return;
   renderer.paintInto(context, view);

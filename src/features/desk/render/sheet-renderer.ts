@@ -2,6 +2,7 @@ import type { SheetDto } from '#shared/contract/drawings.ts';
 import type { SheetRaster } from '../model/sheet-raster.ts';
 import type { Viewport } from '../model/viewport.ts';
 import { type LoadedTile, tileLoader } from './load-tile.ts';
+import { onceAFrame } from './once-a-frame.ts';
 import { AS_SCANNED, paintWithLook, type ScanLook } from './scan-look.ts';
 import type { SceneItem } from './scene.ts';
 import { createTileLayer } from './tile-layer.ts';
@@ -18,8 +19,8 @@ const TILE_REQUESTS = 4;
 /** Tiles beyond the view's edge that are fetched ahead of a pan. */
 const AHEAD_TILES = 1;
 
-/** Device pixels drawn beyond the view's edges: a drag by a hand's width then draws nothing. */
-const MARGIN_DEVICE_PX = 400;
+/** Device pixels drawn beyond the view's edges: a drag by a hand's width then draws nothing, and drawing stays one short task. */
+const MARGIN_DEVICE_PX = 320;
 /** After a pan has rested for so long, what is drawn is centred again for the next one. */
 const PAN_REST_MS = 250;
 /** After a zoom has rested for so long, what was only scaled is drawn at its size; so often while it goes on. */
@@ -63,7 +64,6 @@ export function createSheetRenderer(
   const { fonts } = host.ownerDocument;
   const extraViews = new Map<string, () => void>();
   let view: Viewport | null = null;
-  let scheduled = 0;
   let tilesDue = false;
   let baseDue = false;
   let activeDue = false;
@@ -78,7 +78,7 @@ export function createSheetRenderer(
     concurrency: TILE_REQUESTS,
     onArrival() {
       tilesDue = true;
-      schedule();
+      frame.due();
       for (const paint of extraViews.values()) paint();
     },
   });
@@ -87,12 +87,9 @@ export function createSheetRenderer(
   const base = createTraceCanvas(host, { kind: 'ahead', marginPx });
   const active = createTraceCanvas(host, { kind: 'close' });
 
-  function schedule(): void {
-    if (scheduled === 0) scheduled = requestAnimationFrame(drawFrame);
-  }
+  const frame = onceAFrame(drawFrame);
 
   function drawFrame(): void {
-    scheduled = 0;
     if (tilesDue) tiles.refresh();
     if (baseDue) base.draw();
     if (activeDue) active.draw();
@@ -104,7 +101,7 @@ export function createSheetRenderer(
   function due(baseChanged: boolean, activeChanged: boolean): void {
     baseDue ||= baseChanged;
     activeDue ||= activeChanged;
-    if (view !== null && (baseDue || activeDue)) schedule();
+    if (view !== null && (baseDue || activeDue)) frame.due();
   }
 
   const drawTexts = () => due(true, true);
@@ -180,7 +177,7 @@ export function createSheetRenderer(
       paintWithLook(target, look, () => paintTiles(target, sheet, store, shown, ratio())),
     isWaiting: () => store.isWaiting(),
     destroy() {
-      cancelAnimationFrame(scheduled);
+      frame.end();
       clearTimeout(restTimer);
       fonts.removeEventListener('loadingdone', drawTexts);
       store.close();

@@ -2,6 +2,7 @@ import type { SheetFrame, Viewport } from '../model/viewport.ts';
 import { seenOfRaster } from '../model/viewport.ts';
 import { layerTransform } from './layer-transform.ts';
 import type { LoadedTile } from './load-tile.ts';
+import { movedLayer } from './moved-layer.ts';
 import { AS_SCANNED, paperColour, type ScanLook, scanFilter, veilColour } from './scan-look.ts';
 import {
   levelFor,
@@ -51,6 +52,7 @@ export function createTileLayer(
   paper.append(veil);
   clip.append(paper);
   host.append(clip);
+  const moveTo = movedLayer(paper);
   let view: Viewport | null = null;
   let look = AS_SCANNED;
   let laidOut = '';
@@ -88,7 +90,7 @@ export function createTileLayer(
       view = next;
       // Laying the tiles out at another zoom costs tens of milliseconds with software rendering, scaling them nothing.
       if (!zooming) laidOutAt = next.zoom;
-      paper.style.transform = layerTransform(next, sheet, devicePixelRatioNow(), laidOutAt);
+      moveTo(layerTransform(next, sheet, devicePixelRatioNow(), laidOutAt));
       if (zooming) return false;
       const key = layoutKey(sheet, next);
       if (key === laidOut) return false;

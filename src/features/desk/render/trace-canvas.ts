@@ -1,11 +1,15 @@
 import { StaticCanvas } from 'fabric';
 import type { Viewport } from '../model/viewport.ts';
 import { createFabricScene } from './fabric-sink.ts';
+import { movedLayer } from './moved-layer.ts';
 import type { SceneItem } from './scene.ts';
 import { commonPart, holdsPart, partOfItems, type ScreenPart } from './screen-part.ts';
 
 /** A pan slower than this in one step says nothing about where it is going. */
 const HEADING_FROM_PX = 1;
+
+/** A close canvas is at most so many times as large as it has to be. */
+const MOST_SPARE = 2;
 
 export type TraceCanvas = {
   /** Takes a view on; true when it has to be drawn for it and not only moved. `zooming`: it is only scaled. */
@@ -38,6 +42,7 @@ export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas 
   element.style.transformOrigin = '0 0';
   element.style.pointerEvents = 'none';
   host.append(element);
+  const moveTo = movedLayer(element);
   const fabric = new StaticCanvas(element, { renderOnAddRemove: false, enableRetinaScaling: true });
   const showOnCanvas = createFabricScene(fabric);
   const marginPx = cover.kind === 'ahead' ? cover.marginPx : 0;
@@ -73,14 +78,23 @@ export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas 
   function move(from: Drawn, now: Viewport): void {
     const { x, y } = placeOf(from, now);
     const scale = now.zoom / from.view.zoom;
-    element.style.transform = `translate(${x}px, ${y}px)${scale === 1 ? '' : ` scale(${scale})`}`;
+    moveTo(`translate(${x}px, ${y}px) scale(${scale})`);
   }
 
   function partToDraw(now: Viewport): ScreenPart | null {
-    if (cover.kind === 'close') return neededFor(now);
+    if (cover.kind === 'close') return closePart(now);
     const [x, y] = heading.map((panned) => -marginPx - ahead(panned)) as [number, number];
     heading = [0, 0];
     return { x, y, width: now.widthPx + 2 * marginPx, height: now.heightPx + 2 * marginPx };
+  }
+
+  /** The part as it was while it suffices: one of another size makes the browser lay all its layers out anew. */
+  function closePart(now: Viewport): ScreenPart | null {
+    const needed = neededFor(now);
+    if (needed === null || drawn === null) return needed;
+    return holdsPart(drawn.part, needed) && areaOf(drawn.part) <= MOST_SPARE * areaOf(needed)
+      ? drawn.part
+      : needed;
   }
 
   function ahead(panned: number): number {
@@ -125,6 +139,8 @@ export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas 
     },
   };
 }
+
+const areaOf = ({ width, height }: ScreenPart) => width * height;
 
 /** How far the sheet has moved on screen from one view to the next. */
 function panOf(from: Viewport, to: Viewport): readonly [number, number] {
