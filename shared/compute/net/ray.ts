@@ -60,7 +60,8 @@ function firstInRun(
   limit: number,
   least: number,
 ): { s: number; distance: number } | null {
-  const [dx, dy] = direction;
+  const dx = direction[0];
+  const dy = direction[1];
   let found: { s: number; distance: number } | null = null;
   let nearest = limit;
   const first = run * RUN;
@@ -103,7 +104,9 @@ function mayMeetBox(
   maxX: number,
   maxY: number,
 ): boolean {
-  const [dx, dy] = direction;
+  // Asked some million times for a large net: taken apart as a list, each direction would leave objects behind.
+  const dx = direction[0];
+  const dy = direction[1];
   if (dx > 0 ? maxX < at[0] : dx < 0 ? minX > at[0] : minX > at[0] || maxX < at[0]) return false;
   if (dy > 0 ? maxY < at[1] : dy < 0 ? minY > at[1] : minY > at[1] || maxY < at[1]) return false;
   const a = dx * (minY - at[1]) - dy * (minX - at[0]);
