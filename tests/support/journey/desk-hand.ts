@@ -21,6 +21,8 @@ async function placeAt(page: Page, sheet: Locator, x: number, y: number): Promis
   await page.mouse.move(x, y);
   const readout = sheet.getByRole('status').filter({ hasText: /^x |^Offset / });
   await readout.waitFor();
+  // What follows the pointer is written with the next frame.
+  await page.evaluate(() => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done))));
   const figures = (await readout.textContent())?.match(/−?\d+(\.\d+)?/g) ?? [];
   const [first, second] = figures.map(figure);
   if (first === undefined || second === undefined) throw new Error(`The readout says "${figures}".`);

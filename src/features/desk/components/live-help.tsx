@@ -35,9 +35,9 @@ export function LiveHelp(props: LiveHelpProps) {
 }
 
 const AWAY_PX = 18;
-/** A wide guess: it only says on which side there is room. */
-const CHARACTER_PX = 6.6;
 const LINE_PX = 18;
+/** About the most that is told: by the words of the moment a box would leap from side to side under a moving hand. */
+const ROOM_PX = [320, 5 * LINE_PX] as const;
 /** Under the readout of the place, which a narrow sheet shows in its second row; a finger is seldom there. */
 const IN_CORNER: BesidePlace = { transform: 'translate(12px, 96px)', side: 'flex-start' };
 /** As many rows as a head takes: a box that grows and shrinks under a moving hand jumps, and is laid out anew. */
@@ -111,11 +111,11 @@ type BesidePlace = { readonly transform: string; readonly side: 'flex-start' | '
 /** Beside the pointer where there is room: to its right and below, else to the other side. */
 function besidePlace(view: Viewport, at: SheetPx, words: readonly string[]): BesidePlace {
   const [x, y] = toScreen(view, at);
-  const height = words.length * LINE_PX;
-  const width = CHARACTER_PX * Math.max(...words.map((line) => line.length));
+  const [width, height] = ROOM_PX;
   const flipped = x + AWAY_PX + width > view.widthPx && x - AWAY_PX - width > 0;
   const left = flipped ? `calc(${Math.round(x - AWAY_PX)}px - 100%)` : `${Math.round(x + AWAY_PX)}px`;
-  const top = y + AWAY_PX + height > view.heightPx ? y - AWAY_PX - height : y + AWAY_PX;
+  const above = y + AWAY_PX + height > view.heightPx;
+  const top = above ? y - AWAY_PX - words.length * LINE_PX : y + AWAY_PX;
   return {
     transform: `translate(${left}, ${Math.round(Math.max(4, top))}px)`,
     side: flipped ? 'flex-end' : 'flex-start',

@@ -84,8 +84,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let pointer: { at: SheetPx; keys: Modifiers; view: HostView } | null = null;
   let overlay: ToolOverlay = NO_OVERLAY;
   let fingerHolds = false;
-  let sceneDue = false;
-  const frame = onceAFrame(() => (sceneDue ? showScene() : showOverlay()), 'scene');
+  let due: 'nothing' | 'overlay' | 'scene' = 'nothing';
+  const frame = onceAFrame(showDue, 'scene');
   let scene: readonly SceneItem[] = [];
   /** Labels for which there is no room, by their ids. */
   let crowded: ReadonlyMap<string, SceneItem> = new Map();
@@ -103,8 +103,13 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     balloons: balloons(),
   });
 
+  function showDue(): void {
+    if (due === 'scene') showScene();
+    else if (due === 'overlay') showOverlay();
+  }
+
   function showScene(): void {
-    sceneDue = false;
+    due = 'nothing';
     const state = store.getState();
     const input = sceneInput(state);
     if (onlyDrags(state)) {
@@ -172,11 +177,17 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
 
   /** One scene for all that changes in a frame; it brings along what is under the pointer. */
   function dueScene(): void {
-    sceneDue = true;
+    due = 'scene';
+    frame.due();
+  }
+
+  function dueOverlay(): void {
+    if (due === 'nothing') due = 'overlay';
     frame.due();
   }
 
   function showOverlay(): void {
+    due = 'nothing';
     const { tool, boundaryKind } = store.getState();
     overlay =
       pointer === null
@@ -209,7 +220,9 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   function followPointer(at: SheetPx | null, keys: Modifiers, view: HostView): void {
     pointer = at === null ? null : { at, keys, view };
     store.setPointer(at === null ? null : [at[0], at[1]]);
-    frame.due();
+    dueOverlay();
+    // What stands clear of the pointer must do so before a press that follows in the same frame.
+    if (!isDragging(store.getState())) showDue();
   }
 
   function holdByFinger(at: ScreenPx | null): void {
@@ -230,8 +243,8 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   /** A move by arrow keys of which the end is not heard, as when the window is left with the key held. */
   const settle = () => store.requestEdit({ type: 'settle' });
 
-  ink.onLook(() => pointer !== null && frame.due());
-  crossings.onLook(() => pointer !== null && frame.due());
+  ink.onLook(() => pointer !== null && dueOverlay());
+  crossings.onLook(() => pointer !== null && dueOverlay());
   const hand = createCrosshairHand({
     element,
     store,
@@ -263,12 +276,12 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     store.subscribe(({ pendingEdit }, before) => {
       if (pendingEdit !== null && pendingEdit !== before.pendingEdit) element.focus({ preventScroll: true });
     }),
-    drawingWayChoice.subscribe(frame.due),
+    drawingWayChoice.subscribe(dueOverlay),
     settingOutAids.subscribe(() => {
-      frame.due();
+      dueOverlay();
       showGrid();
     }),
-    rulerOf(store).subscribe(frame.due),
+    rulerOf(store).subscribe(dueOverlay),
     store.onLookAt((at) => views.lookAt(sheetPx(...at))),
     views.subscribe((state, before) => {
       renderer.setView(state.view);
