@@ -89,7 +89,7 @@ export function Magnifier({ store, renderer, followed }: MagnifierProps) {
       <span
         ref={words}
         data-place
-        className="pointer-events-none absolute inset-x-0 top-0 h-4.5 bg-film px-2 text-xs leading-[18px] text-ink-2 tabular-nums contain-strict"
+        className="pointer-events-none absolute top-0.5 left-1 bg-film px-1 text-xs text-ink-2 tabular-nums"
       />
     </fieldset>
   );
