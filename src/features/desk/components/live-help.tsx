@@ -62,7 +62,7 @@ function Beside({ store, views, source, touched }: LiveHelpProps) {
       data-live-help
       className="pointer-events-none absolute top-0 left-0 will-change-transform"
     >
-      <div className="flex h-44 w-md flex-col items-start bg-[linear-gradient(transparent,transparent)] text-sm font-semibold whitespace-nowrap contain-layout contain-size">
+      <div className="flex h-44 w-md flex-col items-start text-sm font-semibold whitespace-nowrap contain-layout contain-size">
         {/* A ground as strong as the halo of the marks: blurred shadows of letters would be painted anew in every frame. */}
         <div className="bg-film/85" />
       </div>
