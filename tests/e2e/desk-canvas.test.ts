@@ -49,6 +49,30 @@ async function pointerAt(): Promise<[number, number]> {
   return [Number(match?.[1]?.replace('−', '-')), Number(match?.[2]?.replace('−', '-'))];
 }
 
+const MOVES = 24;
+
+/** How often the page was laid out, painted and shown while `work` went on; each of the moves comes in two steps. */
+async function pageWork(work: () => Promise<void>) {
+  const session = await page.context().browser()!.newBrowserCDPSession();
+  const names: string[] = [];
+  session.on('Tracing.dataCollected', ({ value }) => {
+    names.push(
+      ...(value as { name: string; ph: string }[]).flatMap(({ name, ph }) => (ph === 'X' ? [name] : [])),
+    );
+  });
+  await session.send('Tracing.start', {
+    transferMode: 'ReportEvents',
+    traceConfig: { includedCategories: ['devtools.timeline'] },
+  });
+  await work();
+  const complete = new Promise((resolve) => session.once('Tracing.tracingComplete', resolve));
+  await session.send('Tracing.end');
+  await complete;
+  await session.detach();
+  const count = (name: string) => names.filter((each) => each === name).length;
+  return { layouts: count('Layout'), paints: count('Paint'), frames: count('Layerize') };
+}
+
 describe('the sheet', () => {
   it('is shown from tiles, finer ones once they are needed', async () => {
     await page.locator('[role=application] img').first().waitFor();
@@ -103,6 +127,28 @@ describe('the sheet', () => {
       return count;
     });
     expect(draws).toBe(0);
+  });
+});
+
+describe('what follows the pointer', () => {
+  it('neither lays the page out nor paints it', async () => {
+    // The ring of the focus is shown, and the magnified view with its words.
+    await hand.sheet.focus();
+    await page.keyboard.press('k');
+    await hand.moveTo([500, 300]);
+    await page.getByRole('group', { name: /^Magnified/ }).waitFor();
+    const done = await pageWork(async () => {
+      for (let step = 1; step <= MOVES; step += 1) await hand.moveTo([500 + step, 300 + step]);
+    });
+    expect(done.frames).toBeGreaterThan(MOVES);
+    // A few for what appears or changes its side while the pointer moves.
+    expect(done.layouts).toBeLessThan(MOVES / 4);
+    expect(done.paints).toBeLessThan(MOVES / 4);
+    // Nothing of it is left behind: readout and magnified view tell the place of the last move.
+    const places = page.getByText(`x ${500 + MOVES}.0, y ${300 + MOVES}.0 px`);
+    await expect.poll(() => places.count()).toBe(2);
+    await page.keyboard.press('Escape');
+    await page.keyboard.press('v');
   });
 });
 

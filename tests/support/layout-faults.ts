@@ -138,7 +138,13 @@ export async function focusFaults(page: Page, state: string): Promise<string[]> 
         at !== null &&
         getComputedStyle(at).outlineStyle !== 'none' &&
         Number.parseFloat(getComputedStyle(at).outlineWidth) >= 1.5;
-      if (!shown(each) && !shown(each.closest('label'))) faults.push(`no focus is seen on ${name}`);
+      // A ring of its own, as large as what has the focus, counts when it is there with the focus.
+      const ring = each.querySelector(':scope > [data-focus-ring]');
+      const ringShown =
+        ring?.checkVisibility() === true &&
+        ring.getBoundingClientRect().width === each.getBoundingClientRect().width &&
+        shown(ring);
+      if (!shown(each) && !shown(each.closest('label')) && !ringShown) faults.push(`no focus is seen on ${name}`);
       const { left, top, width, height } = each.getBoundingClientRect();
       if (width < 2 || height < 2) continue;
       const spots = [0.1, 0.5, 0.9].flatMap((a) =>

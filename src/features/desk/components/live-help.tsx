@@ -7,13 +7,16 @@ import type { FlowNetDocument } from '#shared/contract/document.ts';
 import type { DeskState, DeskStore } from '../model/desk-state.ts';
 import type { HelpShown, LiveHelpSource } from '../model/live-help-source.ts';
 import type { ViewStore } from '../model/view-store.ts';
-import { sheetZoom, toScreen, type Viewport } from '../model/viewport.ts';
+import { sheetZoom, toScreen } from '../model/viewport.ts';
+import { HALO } from '../render/line-look.ts';
 import { movedLayer } from '../render/moved-layer.ts';
 import { onceAFrame } from '../render/once-a-frame.ts';
+import { wordCanvas } from '../render/word-canvas.ts';
+import { blockHeightPx, fontOf, type WordsLook } from '../render/words-block.ts';
+import { type BesidePlace, besidePlace } from './beside-place.ts';
 import { headWords, helpWords } from './live-help-words.ts';
 import { setOutOf, wordsAt } from './pointer-readout.tsx';
 import { thingWords } from './thing-words.ts';
-import { type RowOf, writeRows } from './written-rows.ts';
 
 type LiveHelpProps = {
   store: DeskStore;
@@ -34,56 +37,62 @@ export function LiveHelp(props: LiveHelpProps) {
   );
 }
 
-const AWAY_PX = 18;
-const LINE_PX = 18;
-/** About the most that is told: by the words of the moment a box would leap from side to side under a moving hand. */
-const ROOM_PX = [320, 5 * LINE_PX] as const;
+/** Room for the longest row of words and for as many as there can be, of which most stand empty. Across in sizes of a letter. */
+const ROOM = { across: 32, rows: 10 } as const;
+/** About the most that is told. */
+const MOSTLY = { across: 23, rows: 5 } as const;
 /** Under the readout of the place, which a narrow sheet shows in its second row; a finger is seldom there. */
-const IN_CORNER: BesidePlace = { transform: 'translate(12px, 96px)', side: 'flex-start' };
-/** As many rows as a head takes: a box that grows and shrinks under a moving hand jumps, and is laid out anew. */
+const IN_CORNER: BesidePlace = { x: 12, y: 96, side: 'left' };
+/** As many rows as a head takes: what grows and shrinks under a moving hand jumps. */
 const AWAITED = [text.headAwaited, '\u00a0'];
-
-const ROW: RowOf = { tag: 'p', className: 'm-0 leading-[18px]' };
 
 function Beside({ store, views, source, touched }: LiveHelpProps) {
   const element = useRef<HTMLDivElement>(null);
-  useEffect(
-    () =>
-      element.current === null ? undefined : keepBeside(element.current, { store, views, source, touched }),
-    [store, views, source, touched],
-  );
+  const canvas = useRef<HTMLCanvasElement>(null);
+  useEffect(() => {
+    if (element.current === null || canvas.current === null) return;
+    return keepBeside(element.current, canvas.current, { store, views, source, touched });
+  }, [store, views, source, touched]);
   return (
-    // Said aloud at every movement it would drown everything else; Q tells it. What moves is apart from what is written, of
-    // which the frame keeps its size: else the browser would lay out the page and all its layers anew in every frame.
+    // Said aloud at every movement it would drown everything else; Q tells it.
     <div
       ref={element}
       hidden
       aria-hidden="true"
       data-live-help
-      className="pointer-events-none absolute top-0 left-0 will-change-transform"
+      className="pointer-events-none absolute top-0 left-0 text-sm font-semibold will-change-transform"
     >
-      <div className="flex h-44 w-md flex-col items-start text-sm font-semibold whitespace-nowrap contain-layout contain-size">
-        {/* A ground as strong as the halo of the marks: blurred shadows of letters would be painted anew in every frame. */}
-        <div className="bg-film/85" />
-      </div>
+      <canvas ref={canvas} className="block" />
     </div>
   );
 }
 
-/** Keeps what is told beside the pointer written within an element, and that beside the pointer, until it is ended. */
-function keepBeside(element: HTMLElement, { store, views, source, touched }: LiveHelpProps): () => void {
+/** Keeps what is told beside the pointer written in a canvas, and that beside the pointer, until it is ended. */
+function keepBeside(
+  element: HTMLElement,
+  canvas: HTMLCanvasElement,
+  { store, views, source, touched }: LiveHelpProps,
+): () => void {
   const moveTo = movedLayer(element);
+  const words = wordCanvas(canvas);
+  let size = sizeIn(element);
   const frame = onceAFrame(() => {
     const { shown } = source.state.getState();
-    const words = shown === null ? [] : besideWords(store.getState(), shown, touched);
-    element.hidden = words.length === 0;
-    const framed = element.firstElementChild;
-    const rows = framed?.firstElementChild;
-    if (shown === null || words.length === 0 || !(framed instanceof HTMLElement) || !rows) return;
-    writeRows(rows, ROW, words);
-    const { transform, side } = touched ? IN_CORNER : besidePlace(views.getState().view, shown.at, words);
-    moveTo(transform);
-    framed.style.alignItems = side;
+    const rows = shown === null ? [] : besideWords(store.getState(), shown, touched);
+    if (element.hidden && rows.length > 0) {
+      // Whoever has made letters larger meanwhile finds them so.
+      size = sizeIn(element);
+      words.dress(size.look, size.room.widthPx, size.room.heightPx);
+    }
+    element.hidden = rows.length === 0;
+    if (shown === null || rows.length === 0) return;
+    const { view } = views.getState();
+    const heightPx = blockHeightPx(rows.length, size.look);
+    const { x, y, side } = touched
+      ? IN_CORNER
+      : besidePlace(view, toScreen(view, shown.at), size.mostly, heightPx);
+    words.show(rows, side);
+    moveTo(`translate(${side === 'left' ? x : x - size.room.widthPx}px, ${y}px)`);
   });
   const endings = [
     source.state.subscribe(frame.due),
@@ -99,27 +108,24 @@ function keepBeside(element: HTMLElement, { store, views, source, touched }: Liv
   };
 }
 
+/** How the words look by the class of an element, and how much room they may take and mostly do. */
+function sizeIn(element: HTMLElement) {
+  const { font, sizePx } = fontOf(element);
+  const linePx = Math.round(1.3 * sizePx);
+  // One ground as strong as the halo of the marks: a halo about each letter takes twice as long to paint.
+  const ground = { paddingPx: [0, 0], groundAlpha: HALO.alpha, edged: false, gap: null } as const;
+  const look: WordsLook = { font, linePx, ...ground };
+  const px = ({ across, rows }: { across: number; rows: number }) => ({
+    widthPx: across * sizePx,
+    heightPx: blockHeightPx(rows, look),
+  });
+  return { look, room: px(ROOM), mostly: px(MOSTLY) };
+}
+
 function besideWords(state: DeskState, shown: HelpShown, touched: boolean): string[] {
   // In the corner they stand right under the readout, which tells the place already.
   const place = touched ? [] : wordsOfPlace(shown.at, state.document, setOutOf(state.document));
   return helpWords(shown, place, state, state.reading === null ? [] : AWAITED);
-}
-
-/** `side`: at which side of the element its words stand. */
-type BesidePlace = { readonly transform: string; readonly side: 'flex-start' | 'flex-end' };
-
-/** Beside the pointer where there is room: to its right and below, else to the other side. */
-function besidePlace(view: Viewport, at: SheetPx, words: readonly string[]): BesidePlace {
-  const [x, y] = toScreen(view, at);
-  const [width, height] = ROOM_PX;
-  const flipped = x + AWAY_PX + width > view.widthPx && x - AWAY_PX - width > 0;
-  const left = flipped ? `calc(${Math.round(x - AWAY_PX)}px - 100%)` : `${Math.round(x + AWAY_PX)}px`;
-  const above = y + AWAY_PX + height > view.heightPx;
-  const top = above ? y - AWAY_PX - words.length * LINE_PX : y + AWAY_PX;
-  return {
-    transform: `translate(${left}, ${Math.round(Math.max(4, top))}px)`,
-    side: flipped ? 'flex-end' : 'flex-start',
-  };
 }
 
 /** Tells, when it is asked, what stands at the pointer. */

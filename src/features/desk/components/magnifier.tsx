@@ -39,7 +39,6 @@ export function Magnifier({ store, renderer, followed }: MagnifierProps) {
   const readOnly = useStore(store, (state) => state.readOnly);
   const follows = useStore(followed, ({ at }) => at !== null);
   const canvas = useRef<HTMLCanvasElement>(null);
-  const words = useRef<HTMLSpanElement>(null);
   const chosen = readOnly ? null : (finePlaceOf(document, selection)?.at ?? null);
   const placing = useFinePlacing(store, chosen, (at) => viewAround(renderer.raster, at));
   const held = placing.centre;
@@ -55,9 +54,7 @@ export function Magnifier({ store, renderer, followed }: MagnifierProps) {
       store,
       centre: () => held ?? followed.getState().at ?? chosen,
       viewAround: (at) => viewAround(renderer.raster, at),
-      onPainted(at) {
-        if (words.current !== null) words.current.textContent = placingText.place(at[0], at[1]);
-      },
+      words: (at) => placingText.place(at[0], at[1]),
     });
     const endFollowing = followed.subscribe(magnified.moved);
     return () => {
@@ -82,15 +79,10 @@ export function Magnifier({ store, renderer, followed }: MagnifierProps) {
       }}
       {...placing.handlers}
     >
-      <canvas ref={canvas} className="block h-full w-full" />
+      <canvas ref={canvas} data-place className="block h-full w-full text-xs" />
       <span className="pointer-events-none absolute bottom-0.5 left-1 bg-film px-1 text-xs text-ink-2">
         {text.magnified}
       </span>
-      <span
-        ref={words}
-        data-place
-        className="pointer-events-none absolute top-0.5 left-1 bg-film px-1 text-xs text-ink-2 tabular-nums"
-      />
     </fieldset>
   );
 }

@@ -86,6 +86,10 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
   let fingerHolds = false;
   let due: 'nothing' | 'overlay' | 'scene' = 'nothing';
   const frame = onceAFrame(showDue, 'scene');
+  const helping = onceAFrame(
+    () => options.help.follow(pointer?.at ?? null, overlay, sheetZoom(view())),
+    'told',
+  );
   let scene: readonly SceneItem[] = [];
   /** Labels for which there is no room, by their ids. */
   let crowded: ReadonlyMap<string, SceneItem> = new Map();
@@ -199,7 +203,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     renderer.showActive([...active, ...crowdedAtPointer(), ...pointedAt]);
     const pointsByKeys = options.crosshair.getState().at !== null;
     const magnified = (overlay.magnify || fingerHolds || pointsByKeys) && pointer !== null;
-    options.help.follow(pointer?.at ?? null, overlay, sheetZoom(view()));
+    helping.due();
     const at = magnified ? (overlay.drawnCrossing ?? overlay.snap?.at ?? pointer!.at) : null;
     if (at !== options.followed.getState().at) options.followed.setState({ at });
   }
@@ -306,6 +310,7 @@ export function createSheetController(options: SheetControllerOptions): SheetCon
     act: (type) => host.handle({ type }, keyView()),
     destroy() {
       frame.end();
+      helping.end();
       sizes.disconnect();
       ink.close();
       crossings.close();

@@ -133,12 +133,18 @@ export function SheetView({
       data-panning={panning || undefined}
       className={classNames(
         // Panels over the sheet are never higher than it; what takes the focus does not move the sheet.
-        '[container-type:size] relative touch-none select-none overflow-clip bg-desk focus-visible:outline-offset-[-3px]',
+        '[container-type:size] group/sheet relative touch-none select-none overflow-clip bg-desk focus-visible:outline-none',
         panning ? 'cursor-grabbing' : cursorFor(tool),
         className,
       )}
     >
       <div ref={layers} className="absolute inset-0" />
+      {/* The ring of the focus is no outline of what holds the canvases: the page would be painted anew with each of their frames. */}
+      <span
+        aria-hidden="true"
+        data-focus-ring
+        className="pointer-events-none absolute inset-0 hidden outline-2 -outline-offset-3 outline-focus group-focus-visible/sheet:block"
+      />
       <span id={helpId} className="sr-only">
         {text.keysHelp}
       </span>
@@ -151,10 +157,7 @@ export function SheetView({
       */}
       <div className="pointer-events-none absolute inset-x-3 top-3 bottom-8 flex flex-col justify-between gap-2 sm:inset-x-4 sm:top-3.5">
         <div className="relative flex flex-none flex-wrap items-start justify-between gap-2 @2xl:flex-nowrap [&>*]:pointer-events-auto">
-          {/* Its room is kept while it is not there, so that the buttons stay where they are. */}
-          <div className="pointer-events-none! order-last flex min-w-32 flex-1 basis-full @2xl:order-none @2xl:basis-0">
-            <PointerReadout store={store} />
-          </div>
+          <PointerReadout store={store} />
           <div className="pointer-events-none! ml-auto flex flex-wrap items-start justify-end gap-2 [&_[data-over-sheet]]:pointer-events-auto">
             <SheetMore
               store={store}

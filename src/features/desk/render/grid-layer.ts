@@ -2,6 +2,7 @@ import { gridText as text } from '#client/text/set-out.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { decimalsOf, type GridLine, sectionGridOf } from '../model/section-grid.ts';
 import type { Viewport } from '../model/viewport.ts';
+import { drawAnew } from './drawing-surface.ts';
 import { COLOURS, HALO } from './line-look.ts';
 import { onceAFrame } from './once-a-frame.ts';
 
@@ -28,7 +29,10 @@ export function createGridLayer(host: HTMLElement): GridLayer {
       return;
     }
     canvas ??= inserted(host);
-    paintGrid(canvas, wanted.map, wanted.view);
+    const { map, view } = wanted;
+    drawAnew(canvas, { width: view.widthPx, height: view.heightPx }, (context) =>
+      paintGrid(context, map, view),
+    );
   }
 
   return {
@@ -55,17 +59,7 @@ function inserted(host: HTMLElement): HTMLCanvasElement {
   return canvas;
 }
 
-function paintGrid(canvas: HTMLCanvasElement, map: SectionMap, view: Viewport): void {
-  const ratio = globalThis.devicePixelRatio || 1;
-  const [width, height] = [Math.round(view.widthPx * ratio), Math.round(view.heightPx * ratio)];
-  if (canvas.width !== width || canvas.height !== height) {
-    Object.assign(canvas, { width, height });
-    Object.assign(canvas.style, { width: `${view.widthPx}px`, height: `${view.heightPx}px` });
-  }
-  const context = canvas.getContext('2d');
-  if (context === null) return;
-  context.setTransform(ratio, 0, 0, ratio, 0, 0);
-  context.clearRect(0, 0, view.widthPx, view.heightPx);
+function paintGrid(context: CanvasRenderingContext2D, map: SectionMap, view: Viewport): void {
   const grid = sectionGridOf(map, view);
   if (grid === null) return;
   paintLines(context, grid.lines);

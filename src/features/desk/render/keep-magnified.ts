@@ -4,6 +4,8 @@ import type { Viewport } from '../model/viewport.ts';
 import { paintMagnified } from './magnified.ts';
 import { onceAFrame } from './once-a-frame.ts';
 import type { SheetRenderer } from './sheet-renderer.ts';
+import { tell } from './word-canvas.ts';
+import { fontOf, paintWordsBlock } from './words-block.ts';
 
 export type MagnifiedView = {
   readonly canvas: HTMLCanvasElement;
@@ -12,16 +14,26 @@ export type MagnifiedView = {
   /** Place in the middle; null while there is none. */
   centre(): SheetPx | null;
   viewAround(at: SheetPx): Viewport;
-  onPainted(at: SheetPx): void;
+  /** What is said of the place in the middle. */
+  words(at: SheetPx): string;
 };
 
 /**
- * Paints a magnified view at once and again when the net, a tile or, told by `moved`, its middle changes: in the next
- * frame and once in it, however much has changed.
+ * Paints a magnified view at once and again when the net, a tile or, told by `moved`, its middle changes: once in a
+ * frame, however much has changed.
  */
 export function keepMagnified(shown: MagnifiedView): { moved(): void; end(): void } {
   const { canvas, renderer, store } = shown;
-  const { due, end } = onceAFrame(paint);
+  const { due, end } = onceAFrame(paint, 'magnified');
+  const { font, sizePx } = fontOf(canvas);
+  const look = {
+    font,
+    linePx: Math.round(1.4 * sizePx),
+    paddingPx: [4, 0],
+    groundAlpha: 1,
+    edged: false,
+    gap: null,
+  } as const;
   const extra = renderer.addView('magnifier', due);
 
   function paint(): void {
@@ -30,7 +42,11 @@ export function keepMagnified(shown: MagnifiedView): { moved(): void; end(): voi
     const view = shown.viewAround(at);
     extra.want(view);
     paintMagnified(canvas, renderer, view, store.getState());
-    shown.onPainted(at);
+    const words = [shown.words(at)];
+    const context = canvas.getContext('2d');
+    if (context === null) return;
+    paintWordsBlock(context, words, { x: 4, y: 2, side: 'left', roomPx: view.widthPx }, look);
+    tell(canvas, words);
   }
 
   const endStore = store.subscribe(({ document, preview }, before) => {

@@ -6,5 +6,10 @@
 export function movedLayer(element: Element): (transform: string) => void {
   const movement = new KeyframeEffect(element, null, { duration: 1, fill: 'both' });
   new Animation(movement, element.ownerDocument.timeline).pause();
-  return (transform) => movement.setKeyframes({ transform: [transform, transform] });
+  let told = '';
+  return (transform) => {
+    if (transform === told) return;
+    told = transform;
+    movement.setKeyframes({ transform: [transform, transform] });
+  };
 }

@@ -1,13 +1,26 @@
-/** Work that is done in the next frame and once in it, however often it falls due. */
+/** Work that is done in a frame and once in it, however often it falls due. */
 export type FrameWork = { due(): void; end(): void };
 
+/**
+ * What only explains what is under the pointer takes turns, frame by frame, where both are due: no eye reads it faster, and
+ * what is dragged then follows the hand with time to spare.
+ */
+const TURNS = ['magnified', 'told'] as const;
+type Turn = (typeof TURNS)[number];
+
 /** What is shown is made up before it is painted, in the same frame. */
-const PHASES = ['scene', 'painting'] as const;
+const PHASES = ['scene', ...TURNS, 'painting'] as const;
 type Phase = (typeof PHASES)[number];
 
-const waiting: Record<Phase, Set<() => void>> = { scene: new Set(), painting: new Set() };
+const waiting: Record<Phase, Set<() => void>> = {
+  scene: new Set(),
+  magnified: new Set(),
+  told: new Set(),
+  painting: new Set(),
+};
 let scheduled = 0;
 let running = false;
+let lastTurn: Turn = 'told';
 
 export function onceAFrame(work: () => void, phase: Phase = 'painting'): FrameWork {
   return {
@@ -28,13 +41,23 @@ function schedule(): void {
 function runFrame(): void {
   scheduled = 0;
   running = true;
-  for (const phase of PHASES) {
-    const works = [...waiting[phase]];
-    waiting[phase].clear();
-    for (const work of works) run(work);
-  }
+  runPhase('scene');
+  runPhase(turnNow());
+  runPhase('painting');
   running = false;
   if (PHASES.some((phase) => waiting[phase].size > 0)) schedule();
+}
+
+function turnNow(): Turn {
+  const next = lastTurn === 'told' ? 'magnified' : 'told';
+  if (waiting[next].size > 0) lastTurn = next;
+  return lastTurn;
+}
+
+function runPhase(phase: Phase): void {
+  const works = [...waiting[phase]];
+  waiting[phase].clear();
+  for (const work of works) run(work);
 }
 
 /** What fails is told as it would be from a frame of its own, and keeps nothing else from being shown. */

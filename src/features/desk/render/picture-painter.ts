@@ -3,11 +3,11 @@ import { sheetPx } from '#shared/compute/frames.ts';
 import type { PicturePage } from '../model/picture-page.ts';
 import type { SheetRaster } from '../model/sheet-raster.ts';
 import { rasterMap, type Viewport } from '../model/viewport.ts';
+import { createFabricScene, type FabricScene } from './fabric-scene.ts';
 import { type LoadedTile, tileLoader } from './load-tile.ts';
 import { PX_PER_MM, paintWords } from './picture-words.ts';
 import { paintWithLook, type ScanLook } from './scan-look.ts';
 import type { SceneItem } from './scene.ts';
-import { createScenePainter } from './scene-painter.ts';
 import { type Tile, tileKey } from './tile-grid.ts';
 import { paintTiles, wantedTiles } from './tile-painter.ts';
 import { paintTilesThrough } from './tiles-through.ts';
@@ -51,11 +51,11 @@ export async function paintPicture(
 ): Promise<Blob> {
   const { widthPx, heightPx } = pictureSize(job);
   const png = createPngWriter(widthPx, heightPx, 96 * job.ratio);
-  const scene = createScenePainter(job.scene, job.view);
-  const legend = createScenePainter(job.legend, {
-    widthPx: widthPx / job.ratio,
-    heightPx: heightPx / job.ratio,
-  });
+  const scene = createFabricScene();
+  const legend = createFabricScene();
+  scene.show(job.scene);
+  legend.show(job.legend);
+  const whole = { x: 0, y: 0, width: widthPx / job.ratio, height: heightPx / job.ratio };
   const tiles = createBandTiles(job.raster, signal);
   try {
     for (let top = 0; top < heightPx; top += BAND_PX) {
@@ -64,8 +64,8 @@ export async function paintPicture(
       const context = contextOf(widthPx, rows);
       await paintScan(context, job, tiles, top, rows);
       context.setTransform(job.ratio, 0, 0, job.ratio, 0, -top);
-      paintDrawing(context, job, scene.paint);
-      legend.paint(context, { zoom: 1, origin: sheetPx(0, 0) });
+      paintDrawing(context, job, scene);
+      legend.paint(context, { zoom: 1, origin: sheetPx(0, 0) }, whole);
       paintWords(context, job.page);
       await png.rows(context.getImageData(0, 0, widthPx, rows).data);
       onProgress(Math.min(1, (top + rows) / heightPx));
@@ -122,7 +122,7 @@ async function paintScan(
 function paintDrawing(
   context: CanvasRenderingContext2D,
   { page: { drawing }, view }: PictureJob,
-  paint: (context: CanvasRenderingContext2D, view: Viewport) => void,
+  scene: FabricScene,
 ): void {
   const [x, y] = [drawing.x * PX_PER_MM, drawing.y * PX_PER_MM];
   context.save();
@@ -130,7 +130,7 @@ function paintDrawing(
   context.rect(x, y, drawing.width * PX_PER_MM, drawing.height * PX_PER_MM);
   context.clip();
   context.translate(x, y);
-  paint(context, view);
+  scene.paint(context, view, { x: 0, y: 0, width: view.widthPx, height: view.heightPx });
   context.restore();
 }
 

@@ -49,7 +49,7 @@ export type SheetRenderer = {
 };
 
 /**
- * Shows the sheet and what lies over it in a host element: the tiles below, fabric above, both under the same
+ * Shows the sheet and what lies over it in a host element: the tiles below, traces above, both under the same
  * viewport. It draws only when something has changed and at most once a frame. While the view is being zoomed, what is
  * there is scaled, because drawing it at each step takes longer than a frame; `onZoom` is called when it is about to be drawn
  * at its size again, for whatever depends on the zoom.

@@ -1,6 +1,6 @@
-import { StaticCanvas } from 'fabric';
 import type { Viewport } from '../model/viewport.ts';
-import { createFabricScene } from './fabric-sink.ts';
+import { drawAnew } from './drawing-surface.ts';
+import { createFabricScene } from './fabric-scene.ts';
 import { movedLayer } from './moved-layer.ts';
 import type { SceneItem } from './scene.ts';
 import { commonPart, holdsPart, partOfItems, type ScreenPart } from './screen-part.ts';
@@ -28,10 +28,14 @@ export type TraceCanvas = {
  */
 export type Cover = { readonly kind: 'ahead'; readonly marginPx: number } | { readonly kind: 'close' };
 
-type Drawn = { readonly view: Viewport; readonly part: ScreenPart };
+/** Of the margin what is filled when the zoom has changed: of a net seen as a whole all of it is more than one short task. */
+const FILLED_ON_ZOOM = 0.6;
+
+/** `part`: what the canvas takes; `filled`: the part of it in which everything is drawn. */
+type Drawn = { readonly view: Viewport; readonly part: ScreenPart; readonly filled: ScreenPart };
 
 /**
- * A canvas of fabric's over the tiles. With software rendering drawing a canvas and handing it over takes the main
+ * A canvas of traces over the tiles. With software rendering drawing a canvas and handing it over takes the main
  * thread several milliseconds, more the larger it is. So one that is drawn seldom is drawn ahead, with the margin in
  * the direction of the pan, and one that is drawn in every frame of a drag is no larger than what is in it.
  */
@@ -43,16 +47,15 @@ export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas 
   element.style.pointerEvents = 'none';
   host.append(element);
   const moveTo = movedLayer(element);
-  const fabric = new StaticCanvas(element, { renderOnAddRemove: false, enableRetinaScaling: true });
-  const showOnCanvas = createFabricScene(fabric);
+  const scene = createFabricScene();
   const marginPx = cover.kind === 'ahead' ? cover.marginPx : 0;
   let items: readonly SceneItem[] = [];
   let view: Viewport | null = null;
   let drawn: Drawn | null = null;
   let heading: readonly [number, number] = [0, 0];
 
-  /** Where what is drawn lies now. */
-  function placeOf({ view: from, part }: Drawn, now: Viewport): ScreenPart {
+  /** Where a part of the screen as it was drawn lies now. */
+  function placeOf(part: ScreenPart, from: Viewport, now: Viewport): ScreenPart {
     const scale = now.zoom / from.zoom;
     return {
       x: (from.origin[0] - now.origin[0]) * now.zoom + part.x * scale,
@@ -72,11 +75,11 @@ export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas 
     const { zoom, widthPx, heightPx } = from.view;
     if (zoom !== now.zoom || widthPx !== now.widthPx || heightPx !== now.heightPx) return false;
     const needed = neededFor(now);
-    return needed === null || holdsPart(placeOf(from, now), needed);
+    return needed === null || holdsPart(placeOf(from.filled, from.view, now), needed);
   }
 
   function move(from: Drawn, now: Viewport): void {
-    const { x, y } = placeOf(from, now);
+    const { x, y } = placeOf(from.part, from.view, now);
     const scale = now.zoom / from.view.zoom;
     moveTo(`translate(${x}px, ${y}px) scale(${scale})`);
   }
@@ -86,6 +89,17 @@ export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas 
     const [x, y] = heading.map((panned) => -marginPx - ahead(panned)) as [number, number];
     heading = [0, 0];
     return { x, y, width: now.widthPx + 2 * marginPx, height: now.heightPx + 2 * marginPx };
+  }
+
+  function partToFill(part: ScreenPart, now: Viewport): ScreenPart {
+    if (cover.kind === 'close' || drawn === null || drawn.view.zoom === now.zoom) return part;
+    const spare = marginPx * (1 - FILLED_ON_ZOOM);
+    return {
+      x: part.x + spare,
+      y: part.y + spare,
+      width: part.width - 2 * spare,
+      height: part.height - 2 * spare,
+    };
   }
 
   /** The part as it was while it suffices: one of another size makes the browser lay all its layers out anew. */
@@ -105,37 +119,41 @@ export function createTraceCanvas(host: HTMLElement, cover: Cover): TraceCanvas 
     show(next, zooming = false) {
       heading = view === null || view.zoom !== next.zoom ? [0, 0] : panOf(view, next);
       view = next;
-      if (fabric.isEmpty()) return drawn !== null;
+      if (scene.isEmpty()) return drawn !== null;
       if (drawn === null || !(zooming || isCovered(drawn, next))) return true;
       move(drawn, next);
       return false;
     },
     showItems(next) {
       items = next;
-      return showOnCanvas(next);
+      return scene.show(next);
     },
     draw() {
       if (view === null) return;
-      const part = fabric.isEmpty() ? null : partToDraw(view);
+      const part = scene.isEmpty() ? null : partToDraw(view);
       element.style.display = part === null ? 'none' : '';
-      drawn = part === null ? null : { view, part };
-      if (drawn === null || part === null) return;
-      const { width, height } = part;
-      if (fabric.width !== width || fabric.height !== height) fabric.setDimensions({ width, height });
-      const { zoom, origin } = view;
-      fabric.setViewportTransform([zoom, 0, 0, zoom, -origin[0] * zoom - part.x, -origin[1] * zoom - part.y]);
-      fabric.renderAll();
+      if (part === null) {
+        drawn = null;
+        return;
+      }
+      const now = { view, part, filled: partToFill(part, view) };
+      drawAnew(element, part, (context) => {
+        context.translate(now.filled.x - part.x, now.filled.y - part.y);
+        scene.paint(context, now.view, now.filled);
+      });
+      drawn = now;
       move(drawn, view);
     },
     isOffCentre() {
       if (drawn === null || view === null) return false;
       if (drawn.view.zoom !== view.zoom) return true;
       if (cover.kind === 'close') return false;
-      const { x, y } = placeOf(drawn, view);
+      const { x, y } = placeOf(drawn.part, drawn.view, view);
       return [x, y].some((edge) => Math.abs(edge + marginPx) > marginPx / 2);
     },
     destroy() {
-      void fabric.dispose().then(() => element.remove());
+      scene.end();
+      element.remove();
     },
   };
 }
