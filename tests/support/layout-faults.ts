@@ -144,7 +144,8 @@ export async function focusFaults(page: Page, state: string): Promise<string[]> 
         ring?.checkVisibility() === true &&
         ring.getBoundingClientRect().width === each.getBoundingClientRect().width &&
         shown(ring);
-      if (!shown(each) && !shown(each.closest('label')) && !ringShown) faults.push(`no focus is seen on ${name}`);
+      if (!shown(each) && !shown(each.closest('label')) && !ringShown)
+        faults.push(`no focus is seen on ${name}`);
       const { left, top, width, height } = each.getBoundingClientRect();
       if (width < 2 || height < 2) continue;
       const spots = [0.1, 0.5, 0.9].flatMap((a) =>
