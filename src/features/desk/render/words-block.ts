@@ -37,7 +37,7 @@ export function blockHeightPx(rows: number, { linePx, paddingPx: [, down] }: Wor
   return rows * linePx + 2 * down;
 }
 
-/** Paints rows of words on a ground as wide as the widest of them. */
+/** Paints rows of words on a ground as wide as the widest of them; one that is too long for the room is set closer. */
 export function paintWordsBlock(
   context: CanvasRenderingContext2D,
   words: readonly string[],
@@ -50,7 +50,8 @@ export function paintWordsBlock(
   const widthOf = (text: string) => textWidthPx(context, text) + 2 * across;
   const oneRow = look.gap === null ? null : words.join(look.gap);
   const rows = oneRow !== null && widthOf(oneRow) <= roomPx ? [oneRow] : words;
-  const widthPx = Math.max(...rows.map(widthOf));
+  const wishedPx = Math.max(...rows.map(widthOf));
+  const widthPx = Math.min(roomPx, wishedPx);
   const heightPx = blockHeightPx(rows.length, look);
   const left = side === 'left' ? x : x - widthPx;
   context.globalAlpha = look.groundAlpha;
@@ -66,7 +67,9 @@ export function paintWordsBlock(
   context.textAlign = 'left';
   context.textBaseline = 'middle';
   rows.forEach((row, i) => {
-    context.fillText(row, left + across, y + down + (i + 0.5) * look.linePx);
+    const [from, middle] = [left + across, y + down + (i + 0.5) * look.linePx];
+    if (wishedPx <= roomPx) context.fillText(row, from, middle);
+    else context.fillText(row, from, middle, roomPx - 2 * across);
   });
 }
 
