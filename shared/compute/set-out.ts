@@ -11,6 +11,11 @@ import { type EntityOf, entitiesOf, type FlowNetDocument, singleOf } from '#shar
 import type { Finding, SetOutReading } from '#shared/contract/reading.ts';
 
 const METRES_PER_INCH = 0.0254;
+/**
+ * Length units that a pixel is worth at least. A model of a hand's breadth scanned at 600 dpi has 4e-5 m; far below it a
+ * value is mistyped, and in the end the squares of the scale are too small to be told from nothing.
+ */
+const LEAST_UNITS_PER_PX = 1e-9;
 
 export type SetOut = {
   reading: SetOutReading;
@@ -43,7 +48,7 @@ const NOTHING: SetOutReading = {
  * Clicks are base-raster pixels as given (y down), offsets and elevations the document's length unit; residuals are
  * fitted minus given in that unit. The parameters are worked out afresh each time and never stored. Degenerate
  * input is answered, not thrown: `incomplete` (too little typed), `ambiguous` (up or the side to which offsets grow
- * has to be said), `refused` (coincident points, contradictory answers).
+ * has to be said), `refused` (coincident points, contradictory answers, a scale that no drawing has).
  */
 export function readSetOut(document: FlowNetDocument): SetOut {
   const setOut = singleOf(document, 'setOut')?.value ?? null;
@@ -73,7 +78,16 @@ export function fittedMap(document: FlowNetDocument): SectionMap | null {
 }
 
 function fitOf(document: FlowNetDocument, setOut: EntityOf<'setOut'>): SetOutFit {
-  const points = entitiesOf(document, 'knownPoint');
+  const fit = fitByMethod(entitiesOf(document, 'knownPoint'), setOut);
+  return fit.state === 'fitted' && Math.min(fit.fit.along, fit.fit.up) < LEAST_UNITS_PER_PX
+    ? { state: 'refused', finding: tooSmall() }
+    : fit;
+}
+
+function fitByMethod(
+  points: ReturnType<typeof entitiesOf<'knownPoint'>>,
+  setOut: EntityOf<'setOut'>,
+): SetOutFit {
   if (setOut.method === 'points') return fitByPoints(points, setOut);
   return setOut.scales === 'equal' ? fitByDistance(points, setOut) : distanceGivesOneScale();
 }
@@ -137,6 +151,15 @@ function tooLarge(): Finding {
     'wrong',
     'setOutTooLarge',
     'The typed values of the known points are too large to be worked out. Check them.',
+    { cell: 'scale' },
+  );
+}
+
+function tooSmall(): Finding {
+  return makeFinding(
+    'wrong',
+    'setOutTooSmall',
+    'By the typed values of the known points a pixel is worth next to nothing. Check them, and the unit in which they are typed.',
     { cell: 'scale' },
   );
 }

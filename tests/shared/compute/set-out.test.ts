@@ -83,6 +83,34 @@ describe('setting out by three known points questions what does not go together'
   });
 });
 
+describe('a scale that no drawing has', () => {
+  const refusals = (section: ReturnType<typeof sectionOf>) => {
+    const { reading, map, findings } = readSetOut(section);
+    expect([reading.state, map]).toEqual(['refused', null]);
+    return findings.map(({ code }) => code);
+  };
+
+  it('is refused, so that no figure is worked out of nothing', () => {
+    const ends: Known[] = [{ at: [500, 1000], offset: 0, elevation: 98 }, { at: [1500, 1000] }];
+    for (const distance of [1e-7, 1e-160, 1e-320])
+      expect(
+        refusals(sectionOf(ends, { method: 'distance', distance, offsetsGrow: 'right' })),
+        String(distance),
+      ).toEqual(['setOutTooSmall']);
+    expect(refusals(sectionOf([known(0, 0, 0, 0), known(900, 300, 1e-170, -1e-171)]))).toEqual([
+      'setOutTooSmall',
+    ]);
+  });
+
+  it('is not that of the smallest model: a microscope’s picture of half a micrometre to the pixel', () => {
+    const ends: Known[] = [{ at: [500, 1000], offset: 0, elevation: 0 }, { at: [1500, 1000] }];
+    const { reading } = readSetOut(
+      sectionOf(ends, { method: 'distance', distance: 5e-4, offsetsGrow: 'right' }),
+    );
+    expect(reading.unitsPerPx).toBeCloseTo(5e-7, 18);
+  });
+});
+
 describe('setting out by known points', () => {
   it('finds scale, rotation and a probe from two points (published check 7-01, complex algebra)', () => {
     const { reading, map } = readSetOut(sectionOf([known(412, 1310, 0, 100), known(2860, 1262, 61.2, 100)]));
