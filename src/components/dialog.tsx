@@ -36,7 +36,7 @@ export function Dialog({ title, onClose, children, wide = false, full = false }:
         onClose?.();
       }}
       className={`m-auto max-h-[calc(100dvh-24px)] w-[calc(100vw-24px)] overflow-auto rounded-sheet border border-ink bg-film p-0 text-ink ${
-        full ? 'max-w-[1240px]' : wide ? 'max-w-[860px]' : 'max-w-[480px]'
+        full ? 'max-w-[77.5rem]' : wide ? 'max-w-[53.75rem]' : 'max-w-[30rem]'
       }`}
     >
       <h2 ref={heading} id={titleId} className="m-0 border-b border-rule px-4 py-2.5 text-md font-bold">

@@ -52,7 +52,7 @@ export function Menu({ label, button, buttonClassName, children }: MenuProps) {
       {open ? (
         <div
           id={listId}
-          className="absolute right-0 z-20 mt-1 w-[220px] rounded-sheet border border-ink bg-film py-1"
+          className="absolute right-0 z-20 mt-1 w-[13.75rem] rounded-sheet border border-ink bg-film py-1"
         >
           {children(() => setOpen(false))}
         </div>

@@ -34,7 +34,7 @@ export function Page({ title, heading, lead, action, narrow = false, children }:
     <main
       id="content"
       tabIndex={-1}
-      className={`mx-auto w-full px-6 pt-[22px] pb-10 max-sm:px-3 ${narrow ? 'max-w-[640px]' : 'max-w-[1240px]'}`}
+      className={`mx-auto w-full px-6 pt-[22px] pb-10 max-sm:px-3 ${narrow ? 'max-w-[40rem]' : 'max-w-[77.5rem]'}`}
     >
       <title>{`${title} – ${commonText.product}`}</title>
       <div className="mb-[18px] flex flex-wrap items-end gap-x-4 gap-y-2">

@@ -94,10 +94,12 @@ export function PaneSeparator(props: PaneSeparatorProps) {
         title={props.foldLabel}
         aria-expanded={!folded}
         aria-controls={props.paneId}
-        // The mark is narrow, what is pressed is not.
+        // The mark is narrow, what is pressed is not. In pixels, so that it does not grow over the words beside it.
         className={classNames(
           'group absolute flex border-0 bg-transparent p-0',
-          along ? 'left-1/2 h-6 w-9 -translate-x-1/2' : 'top-1/2 h-9 w-6 -translate-y-1/2',
+          along
+            ? 'left-1/2 h-[24px] w-[36px] -translate-x-1/2'
+            : 'top-1/2 h-[36px] w-[24px] -translate-y-1/2',
           along ? (folded ? 'bottom-1/2 items-end' : '-top-[3px] items-start') : null,
           side === 'left' && (folded ? 'left-1/2' : '-left-[3px]'),
           side === 'right' && (folded ? 'right-1/2 justify-end' : '-right-[3px] justify-end'),
@@ -107,7 +109,7 @@ export function PaneSeparator(props: PaneSeparatorProps) {
         <span
           className={classNames(
             'flex items-center justify-center rounded-sheet border border-rule bg-film text-ink-2 group-hover:border-ink group-hover:text-ink',
-            along ? 'h-[15px] w-9' : 'h-9 w-[15px]',
+            along ? 'h-[15px] w-[36px]' : 'h-[36px] w-[15px]',
           )}
         >
           <svg

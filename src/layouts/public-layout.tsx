@@ -13,7 +13,7 @@ export function PublicLayout({
   children: ReactNode;
 }) {
   return (
-    <main id="content" className="mx-auto w-full max-w-[420px] px-3 pt-[9vh] pb-10">
+    <main id="content" className="mx-auto w-full max-w-[26.25rem] px-3 pt-[9vh] pb-10">
       <title>{`${title} – ${commonText.product}`}</title>
       <div className="border border-ink bg-film">
         <div className="border-b border-ink px-4 py-2">

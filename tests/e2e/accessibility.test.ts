@@ -9,7 +9,12 @@ import { axeFaults } from '#tests/support/axe.ts';
 import { openBrowser, PHONE, type TestBrowser } from '#tests/support/browser.ts';
 import { Caller } from '#tests/support/caller.ts';
 import { pdfDrawing } from '#tests/support/drawing-files.ts';
-import { faultsAt320, faultsAtTwiceTheText, focusFaults } from '#tests/support/layout-faults.ts';
+import {
+  faultsAt320,
+  faultsAtTwiceTheText,
+  faultsOfLargerLetters,
+  focusFaults,
+} from '#tests/support/layout-faults.ts';
 import { projectRoot, type RealServer, startRealServer } from '#tests/support/real-server.ts';
 import { PHONE_STATES, STATES, VECTORS } from '#tests/support/screen-states.ts';
 import { PUBLIC_SCREENS, SCREENS_OF, type Screen, signInToDemo } from '#tests/support/screens.ts';
@@ -91,6 +96,30 @@ describe.each(all)('to $person', ({ person, screens }) => {
   it.each(named(screens))('%s has no fault', async (_name, screen) => {
     const page = await opened(person, screen);
     const faults = [...(await axeFaults(page, screen.name)), ...(await layoutFaults(page, screen))];
+    expect(faults).toEqual([]);
+  });
+});
+
+/** The engineer's pages as they open; what is pressed in them stands elsewhere in another layout. */
+const PAGES = SCREENS_OF.flatMap(({ person, screens }) =>
+  person === engineer.email ? screens.filter(({ name, goesOn }) => !goesOn && !name.includes(',')) : [],
+);
+
+/** Set by the browser's own setting, letters do to a page what its zoom does: it is laid out for a narrower window. */
+describe.each([24, 32])('with letters of %i px set in the browser', (lettersPx) => {
+  it('nothing of a screen is cut off, covered or pushed aside, and the tools of the desk fit', async () => {
+    const larger = await openBrowser(server.address, { lettersPx });
+    const page = await larger.newPage();
+    await signInToDemo(page, engineer.email);
+    const faults: string[] = [];
+    for (const screen of PAGES) {
+      await page.goto(screen.path);
+      await screen.open(page);
+      // With a tool in hand that draws, the palette shows the ways of drawing as well.
+      if (screen.name === 'desk') await page.keyboard.press('e');
+      faults.push(...(await faultsOfLargerLetters(page, screen.name)));
+    }
+    await larger.browser.close();
     expect(faults).toEqual([]);
   });
 });

@@ -26,9 +26,18 @@ export interface TestBrowser {
   close(): Promise<void>;
 }
 
-/** Debian's Chromium, headless. `baseURL` lets pages be opened by path. */
-export async function openBrowser(baseURL: string): Promise<TestBrowser> {
-  const browser = await chromium.launch({ executablePath: await ensureChromium(), args: BROWSER_ARGS });
+/**
+ * Debian's Chromium, headless. `baseURL` lets pages be opened by path; `lettersPx` are letters as somebody has set them in
+ * the browser, which has 16 of itself.
+ */
+export async function openBrowser(
+  baseURL: string,
+  { lettersPx }: { lettersPx?: number } = {},
+): Promise<TestBrowser> {
+  const browser = await chromium.launch({
+    executablePath: await ensureChromium(),
+    args: lettersPx === undefined ? BROWSER_ARGS : [...BROWSER_ARGS, settingsWith(lettersPx)],
+  });
   const watch = consoleWatch();
   return {
     browser,
@@ -48,6 +57,12 @@ export async function openBrowser(baseURL: string): Promise<TestBrowser> {
       watch.check();
     },
   };
+}
+
+/** The last of several such arguments holds: a headless browser is given its mouse by the same one. */
+function settingsWith(lettersPx: number): string {
+  const mouse = 'primaryHoverType=2,availableHoverTypes=2,primaryPointerType=4,availablePointerTypes=4';
+  return `--blink-settings=${mouse},defaultFontSize=${lettersPx}`;
 }
 
 function consoleWatch() {

@@ -38,6 +38,20 @@ export async function faultsAtTwiceTheText(page: Page, state: string): Promise<s
   return found.map((each) => `${state} at 200 % text: ${each}`);
 }
 
+/** What is cut off, covered, or pushed out at the side, in a browser that has been set to larger letters. */
+export async function faultsOfLargerLetters(page: Page, state: string): Promise<string[]> {
+  const found = await hiddenWords(page);
+  const aside = await page.evaluate(() => {
+    const tools = document.querySelector('nav[aria-label="Drawing tools"].flex-col');
+    return [document.documentElement, tools].flatMap((each) =>
+      each && each.scrollWidth > each.clientWidth
+        ? `${each.scrollWidth} px in ${each.clientWidth}: ${each.outerHTML.slice(0, 80)}`
+        : [],
+    );
+  });
+  return [...found, ...aside].map((each) => `${state}: ${each}`);
+}
+
 const settled = (page: Page) =>
   page.evaluate(
     () => new Promise<void>((done) => requestAnimationFrame(() => requestAnimationFrame(() => done()))),

@@ -10,6 +10,7 @@ import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { keptLocally } from '#client/lib/kept-locally.ts';
 import { paths } from '#client/lib/paths.ts';
 import { useMedia } from '#client/lib/use-media.ts';
+import { NARROW_QUERY } from '#client/lib/width-queries.ts';
 import { blindText as text } from '#client/text/check-work.ts';
 import { commonText } from '#client/text/common.ts';
 import { deskPageText } from '#client/text/desk-page.ts';
@@ -22,12 +23,11 @@ import { PaneSwitch } from '../desk/pane-switch.tsx';
 import { useBlindMarks } from './use-blind-marks.ts';
 import { usePlacing } from './use-placing.ts';
 
-const NARROW = '(max-width: 819.98px)';
 const PANES = ['reading', 'sheet'] as const;
 
 /** The net alone, for a reviewer who may still read it blind: the server sends no figure of the engineer's. */
 export function BlindPage({ view }: { view: BlindView }) {
-  const narrow = useMedia(NARROW);
+  const narrow = useMedia(NARROW_QUERY);
   const [pane, setPane] = useState<(typeof PANES)[number]>('reading');
   const store = useMemo(() => netAlone(view), [view]);
   const kept = useKeptReading(view);

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { classNames } from '#client/components/class-names.ts';
 import { useMedia } from '#client/lib/use-media.ts';
+import { ROOMY_QUERY } from '#client/lib/width-queries.ts';
 import { checkText as text } from '#client/text/revisions.ts';
 import { PaneSwitch } from '../desk/pane-switch.tsx';
 
@@ -19,16 +20,14 @@ interface CheckGridProps {
   onPane: (pane: CheckPane) => void;
 }
 
-/** With room for three columns the check stands at the left, where the tools are on the desk. */
-const ROOMY = '(min-width: 1080px)';
-
 /**
  * Sheet and schedule as on the desk; in the margin the check, the notes and the title block. All layouts are the same
  * elements in other places: what is typed of a decision stays when a tablet is turned.
  */
 export function CheckGrid(props: CheckGridProps) {
   const { narrow, pane, onPane } = props;
-  const roomy = useMedia(ROOMY);
+  // With room for three columns the check stands at the left, where the tools are on the desk.
+  const roomy = useMedia(ROOMY_QUERY);
   const look = narrow ? narrowLook(pane) : roomy ? ROOMY_LOOK : CLOSE_LOOK;
   return (
     <main id="content" className="flex min-h-0 flex-1 flex-col">
@@ -61,12 +60,12 @@ type Look = Readonly<
 const BOTH_ROWS = 'row-start-1 row-end-3 min-h-0 min-w-0';
 const SHEET_OVER_SCHEDULE = {
   sheet: 'flex min-h-0 min-w-0 flex-1 flex-col',
-  schedule: 'h-[232px] min-w-0 shrink-0 border-t border-rule',
+  schedule: 'h-58 min-w-0 shrink-0 border-t border-rule',
 };
 
 const ROOMY_LOOK: Look = {
   ...SHEET_OVER_SCHEDULE,
-  grid: 'grid-cols-[270px_minmax(0,1fr)_340px] xl:grid-cols-[280px_minmax(0,1fr)_372px]',
+  grid: 'grid-cols-[min(16.875rem,25vw)_minmax(0,1fr)_min(21.25rem,32vw)] xl:grid-cols-[min(17.5rem,21vw)_minmax(0,1fr)_min(23.25rem,28vw)]',
   middle: `col-start-2 flex flex-col ${BOTH_ROWS}`,
   margin: 'contents',
   scrolled: 'contents',
@@ -77,7 +76,7 @@ const ROOMY_LOOK: Look = {
 
 const CLOSE_LOOK: Look = {
   ...SHEET_OVER_SCHEDULE,
-  grid: 'grid-cols-[minmax(0,1fr)_320px]',
+  grid: 'grid-cols-[minmax(0,1fr)_min(20rem,40vw)]',
   middle: `col-start-1 flex flex-col ${BOTH_ROWS}`,
   margin: `col-start-2 flex flex-col border-l-[1.5px] border-ink bg-film ${BOTH_ROWS}`,
   scrolled: 'flex min-h-0 flex-1 flex-col overflow-y-auto',

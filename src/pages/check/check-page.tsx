@@ -20,6 +20,7 @@ import { StayedOpenList } from '#client/features/revisions/components/stayed-ope
 import { CalculationSheetPanel } from '#client/features/sheets/components/calculation-sheet-panel.tsx';
 import { paths } from '#client/lib/paths.ts';
 import { useMedia } from '#client/lib/use-media.ts';
+import { NARROW_QUERY } from '#client/lib/width-queries.ts';
 import { calculationSheetText } from '#client/text/calculation-sheet.ts';
 import { commonText } from '#client/text/common.ts';
 import { deskPageText } from '#client/text/desk-page.ts';
@@ -35,8 +36,6 @@ import { FrozenTitleBlock } from './frozen-title-block.tsx';
 import { useCheckLive } from './use-check-live.ts';
 import { useFrozenNotes } from './use-frozen-notes.ts';
 import { useRevisionBefore } from './use-revision-before.ts';
-
-const NARROW = '(max-width: 819.98px)';
 
 /** The reviewer's view of a revision: the frozen record, and apart from it what is worked out when that is asked for. */
 export function CheckPage() {
@@ -60,7 +59,7 @@ function OpenCheck({ revisionId }: { revisionId: string }) {
 
 function Check({ revision }: { revision: RevisionDto }) {
   const { payload, sheet, summary } = revision;
-  const narrow = useMedia(NARROW);
+  const narrow = useMedia(NARROW_QUERY);
   const [pane, setPane] = useState<CheckPane>('sheet');
   const store = useFrozenStore(revision);
   const notes = useFrozenNotes(revision, store);

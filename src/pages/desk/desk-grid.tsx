@@ -39,8 +39,8 @@ export function DeskGrid(props: DeskGridProps) {
   usePartKeys();
   const id = useId();
   const { narrow, pane, onPane, panes } = props;
-  const { sizes, window } = panes;
-  const px = (each: PaneId) => panePx(each, window, sizes);
+  const { sizes, window, letterScale } = panes;
+  const px = (each: PaneId) => panePx(each, window, sizes) * letterScale;
   const look = narrow ? narrowLook(pane) : wideLook(sizes);
   const gridTemplate = narrow
     ? 'auto auto minmax(0, 1fr) / minmax(0, 1fr)'

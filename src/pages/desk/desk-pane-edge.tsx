@@ -20,10 +20,10 @@ interface DeskPaneEdgeProps {
 
 /** The edge between the sheet and one of the panes about it. */
 export function DeskPaneEdge({ pane, side, paneId, panes }: DeskPaneEdgeProps) {
-  const { sizes, window, change } = panes;
+  const { sizes, window, letterScale, change } = panes;
   const { folded } = sizes[pane];
   const { least, most } = paneRange(pane, window, sizes);
-  const px = panePx(pane, window, sizes);
+  const px = panePx(pane, window, sizes) * letterScale;
   return (
     <PaneSeparator
       label={text.size[pane]}
@@ -31,13 +31,13 @@ export function DeskPaneEdge({ pane, side, paneId, panes }: DeskPaneEdgeProps) {
       paneId={paneId}
       side={side}
       px={px}
-      least={least}
-      most={most}
+      least={least * letterScale}
+      most={most * letterScale}
       folded={folded}
-      valueText={folded ? text.folded : text.sizeOf(px)}
+      valueText={folded ? text.folded : text.sizeOf(Math.round(px))}
       foldLabel={(folded ? text.unfold : text.fold)[pane]}
-      onDrag={(next) => change((now) => draggedPane(now, pane, next, window))}
-      onResize={(next) => change((now) => resizedPane(now, pane, next, window))}
+      onDrag={(next) => change((now) => draggedPane(now, pane, next / letterScale, window))}
+      onResize={(next) => change((now) => resizedPane(now, pane, next / letterScale, window))}
       onUsual={() => change((now) => usualPane(now, pane))}
       onFold={() => change((now) => foldedPane(now, pane, !folded))}
     />

@@ -22,6 +22,7 @@ import { useSession } from '#client/features/session/hooks/use-session.ts';
 import { downloadFrom } from '#client/lib/download.ts';
 import { paths } from '#client/lib/paths.ts';
 import { useMedia } from '#client/lib/use-media.ts';
+import { NARROW_QUERY } from '#client/lib/width-queries.ts';
 import { commonText } from '#client/text/common.ts';
 import { deskPageText as text } from '#client/text/desk-page.ts';
 import { sendingText } from '#client/text/revisions.ts';
@@ -43,7 +44,6 @@ import { useMargin } from './use-margin.ts';
 import { usePanes } from './use-panes.ts';
 
 /** Below this the parts of the desk do not fit side by side; the same measure as the styles' `md`. */
-const NARROW = '(max-width: 819.98px)';
 
 interface OpenDeskProps {
   netId: string;
@@ -58,7 +58,7 @@ export function OpenDesk(props: OpenDeskProps) {
 
 function DeskParts({ netId, session, takeOver, detail }: OpenDeskProps & { detail: NetDetailDto }) {
   const { store, saving, readOnly } = session;
-  const narrow = useMedia(NARROW);
+  const narrow = useMedia(NARROW_QUERY);
   const { person } = useSession();
   const panes = usePanes(person?.id ?? '');
   useKeptView(store, person?.id ?? '');

@@ -7,11 +7,15 @@ import {
   type WindowSize,
 } from '#client/features/desk/model/pane-sizes.ts';
 import { keptLocally } from '#client/lib/kept-locally.ts';
+import { useLetterScale } from '#client/lib/letter-scale.ts';
 import type { DeskPane } from './desk-grid.tsx';
 
 export interface Panes {
   sizes: PaneSizes;
+  /** In pixels at the usual size of letters, as the sizes are. */
   window: WindowSize;
+  /** Pixels of the screen to one of those. */
+  letterScale: number;
   change(to: (sizes: PaneSizes) => PaneSizes): void;
   /** Unfolds the pane that holds a part of the desk which was asked for. */
   bring(part: DeskPane): void;
@@ -23,10 +27,12 @@ export function usePanes(personId: string): Panes {
   const sizes = useStore(kept);
   const widthPx = useSyncExternalStore(onWindowSize, () => window.innerWidth);
   const heightPx = useSyncExternalStore(onWindowSize, () => window.innerHeight);
+  const letterScale = useLetterScale();
   const change = (to: (sizes: PaneSizes) => PaneSizes) => kept.setState(to, true);
   return {
     sizes,
-    window: { widthPx, heightPx },
+    window: { widthPx: widthPx / letterScale, heightPx: heightPx / letterScale },
+    letterScale,
     change,
     bring(part) {
       if (part === 'sheet') return;

@@ -21,7 +21,7 @@ export function SheetPage() {
     return sheetContent(revisionSource({ payload, hash, summary, review, notes, jobNumber: '' }));
   }, [revision]);
   return (
-    <main id="content" className="mx-auto w-full max-w-[1000px] bg-white px-6 py-5 text-base print:p-0">
+    <main id="content" className="mx-auto w-full max-w-[62.5rem] bg-white px-6 py-5 text-base print:p-0">
       <title>{`${content.title} – ${commonText.product}`}</title>
       <div className="mb-3 flex gap-2 print:hidden">
         <Button look="main" onClick={() => window.print()}>

@@ -17,7 +17,7 @@ export function ActivityFilterBar({ filters, people, onChange }: ActivityFilterB
     onChange: (event: { target: { value: string } }) => onChange(name, event.target.value),
   });
   return (
-    <div className="mb-4 grid max-w-[820px] grid-cols-[repeat(auto-fit,minmax(150px,1fr))] items-end gap-x-3 gap-y-2.5">
+    <div className="mb-4 grid max-w-[51.25rem] grid-cols-[repeat(auto-fit,minmax(9.375rem,1fr))] items-end gap-x-3 gap-y-2.5">
       <SelectField label={text.who} {...wiring('person')}>
         <option value="">{text.everybody}</option>
         {people.map(({ id, name }) => (

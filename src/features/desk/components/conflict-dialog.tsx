@@ -70,8 +70,8 @@ function Versions({
           {conflictFacts(conflict.mine, conflict.theirs).map((fact) => (
             <tr key={fact.name}>
               <Cell>{fact.name}</Cell>
-              <Cell className="max-w-[280px] break-words">{fact.mine}</Cell>
-              <Cell className="max-w-[280px] break-words">{fact.theirs}</Cell>
+              <Cell className="max-w-[17.5rem] break-words">{fact.mine}</Cell>
+              <Cell className="max-w-[17.5rem] break-words">{fact.theirs}</Cell>
             </tr>
           ))}
         </tbody>

@@ -23,7 +23,7 @@ export function ConflictPicture({ conflict, document }: { conflict: Conflict; do
         role="img"
         aria-label={text.picture}
         viewBox={box.join(' ')}
-        className="h-[180px] max-w-full grow basis-[300px] border border-rule-2 bg-white"
+        className="h-[180px] max-w-full grow basis-[18.75rem] border border-rule-2 bg-white"
       >
         {around.map(({ id, value }) => (
           <Stroke key={id} points={shapeOf(value)} colour="var(--color-rule)" width={1} />

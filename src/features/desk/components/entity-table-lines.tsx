@@ -116,7 +116,7 @@ function Row({ row, head, store, disabled, onShow }: RowProps) {
       {open ? (
         <tr id={verticesId}>
           <td colSpan={8} className="border-b border-rule bg-paper/40 px-3.5 pb-3">
-            <div className="max-w-[460px]">
+            <div className="max-w-[28.75rem]">
               <VertexTable store={store} lineId={id} line={line} disabled={still} />
             </div>
           </td>

@@ -26,7 +26,7 @@ export function HistorySteps({ store, from, keeping }: HistoryStepsProps) {
       button={<Chevron />}
       buttonClassName="border-0 bg-transparent px-2 py-1.5 text-ink-2 hover:bg-hover disabled:opacity-55 touch"
       disabled={steps.length === 0}
-      listClassName="w-[300px]"
+      listClassName="w-[18.75rem]"
     >
       {(close) => (
         <>

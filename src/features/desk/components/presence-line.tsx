@@ -49,7 +49,7 @@ function Initials({ others }: { others: readonly PresentDesk[] }) {
           key={clientId}
           aria-hidden="true"
           title={person.name}
-          className="flex size-[26px] items-center justify-center rounded-full border border-edge border-dashed bg-film text-xs font-semibold text-ink-2"
+          className="flex size-[1.625rem] items-center justify-center rounded-full border border-edge border-dashed bg-film text-xs font-semibold text-ink-2"
         >
           {initialsOf(person.name)}
         </span>

@@ -21,7 +21,10 @@ export function SavingLine({
   const facts = useStore(saving.state);
   const state = saveStateOf(facts);
   return (
-    <div role="status" className="flex max-w-[540px] flex-wrap items-center justify-end gap-x-2 text-right">
+    <div
+      role="status"
+      className="flex max-w-[33.75rem] flex-wrap items-center justify-end gap-x-2 text-right"
+    >
       <span className={colourOf(state)}>{sentenceOf(state, store, facts.conflicts[0]?.entityId)}</span>
       {state.kind === 'conflict' ? (
         <button type="button" className={LINK} onClick={onCompare}>

@@ -56,7 +56,7 @@ export function PointFinder({ typed, onType, found, all, onFirst }: PointFinderP
         placeholder={text.filter}
         title={text.filterHelp}
         value={typed}
-        className="w-[120px] rounded-sheet border border-edge bg-white px-2 py-[2px] text-sm"
+        className="w-[7.5rem] rounded-sheet border border-edge bg-white px-2 py-[2px] text-sm"
         onChange={(event) => onType(event.target.value)}
         onKeyDown={(event) => {
           if (event.key === 'Enter') onFirst();
@@ -80,7 +80,7 @@ export function ScheduleColumnsChoice({ columns, hidden, onChange }: ScheduleCol
       listLabel={text.columnsTitle}
       button={text.columns}
       buttonClassName={buttonClass('quiet', 'px-2 py-[2px] text-sm')}
-      listClassName="w-[220px] py-1.5"
+      listClassName="w-[13.75rem] py-1.5"
     >
       {() => (
         <>

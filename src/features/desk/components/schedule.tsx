@@ -66,7 +66,7 @@ export function Schedule({
     ({ column }) => column === 'name' || !hidden.includes(column),
   );
   return (
-    <table className="w-full min-w-[700px]">
+    <table className="w-full min-w-[43.75rem]">
       <caption className="sr-only">{text.title}</caption>
       <thead className="sticky top-0 z-[2] bg-film">
         <tr>

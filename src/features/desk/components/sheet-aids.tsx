@@ -37,7 +37,11 @@ export function SheetAids({ store, noteCount }: { store: DeskStore; noteCount: n
     // Over the panel the wheel scrolls the panel; let through, it would zoom the sheet beneath.
     const keep = (event: WheelEvent) => event.stopPropagation();
     panel.addEventListener('wheel', keep);
-    return () => panel.removeEventListener('wheel', keep);
+    const unfollow = keepRoomBelow(panel);
+    return () => {
+      panel.removeEventListener('wheel', keep);
+      unfollow();
+    };
   }, [open]);
 
   const aids: readonly Aid[] = readOnly ? ['lines', 'view'] : ['lines', 'snap', 'view'];
@@ -73,7 +77,7 @@ export function SheetAids({ store, noteCount }: { store: DeskStore; noteCount: n
           tabIndex={-1}
           data-over-sheet
           aria-label={text[open]}
-          className="absolute top-full right-0 z-10 mt-2 max-h-[min(56dvh,27rem,100cqh-6rem)] w-[min(20rem,100%)] touch-pan-y overflow-y-auto rounded-sheet border border-ink bg-film px-3 py-2.5"
+          className="absolute top-full right-0 z-10 mt-2 max-h-[min(56dvh,27rem,var(--room-below))] w-[min(20rem,100%)] touch-pan-y overflow-y-auto rounded-sheet border border-ink bg-film px-3 py-2.5"
           onKeyDown={(event) => {
             if (event.key !== 'Escape') return;
             event.stopPropagation();
@@ -88,6 +92,23 @@ export function SheetAids({ store, noteCount }: { store: DeskStore; noteCount: n
       )}
     </>
   );
+}
+
+const EDGE_PX = 8;
+
+/** Keeps a panel above the foot of the sheet, however many rows of buttons stand over it. */
+function keepRoomBelow(panel: HTMLElement): () => void {
+  const sheet = panel.closest('[data-sheet]');
+  const buttons = panel.offsetParent;
+  if (sheet === null || buttons === null) return () => {};
+  const fit = () => {
+    const room = sheet.getBoundingClientRect().bottom - panel.getBoundingClientRect().top - EDGE_PX;
+    panel.style.setProperty('--room-below', `${room}px`);
+  };
+  const observer = new ResizeObserver(fit);
+  observer.observe(sheet);
+  observer.observe(buttons);
+  return () => observer.disconnect();
 }
 
 /** Says on the sheet which kinds are hidden: what is not seen is easily taken for what is not there. */

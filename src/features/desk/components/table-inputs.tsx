@@ -4,7 +4,7 @@ import { useTypedText } from './use-typed-text.ts';
 
 /** Inputs that look like the table's own figures until they are pointed at or hold the focus. */
 const IN_TABLE =
-  'w-full min-w-[64px] rounded-sheet border bg-transparent px-1.5 py-px hover:border-edge focus:border-edge focus:bg-white';
+  'w-full min-w-[4rem] rounded-sheet border bg-transparent px-1.5 py-px hover:border-edge focus:border-edge focus:bg-white';
 
 /** An empty field shows where it is. */
 const edgeOf = (shown: string) => (shown === '' ? 'border-edge' : 'border-transparent');

@@ -5,7 +5,10 @@ export const PANE_IDS = ['tools', 'figures', 'margin'] as const;
 export type PaneId = (typeof PANE_IDS)[number];
 
 export type PaneSize = { readonly px: number | null; readonly folded: boolean };
-/** What one person has made of the panes; `px` null = the usual size. */
+/**
+ * What one person has made of the panes; `px` null = the usual size. Here and below pixels are those at the usual size of
+ * letters: panes grow with the letters in them.
+ */
 export type PaneSizes = Readonly<Record<PaneId, PaneSize>>;
 export type WindowSize = { readonly widthPx: number; readonly heightPx: number };
 export type PaneRange = { readonly least: number; readonly most: number; readonly usual: number };
@@ -17,6 +20,8 @@ export const USUAL_PANES: PaneSizes = { tools: USUAL, figures: USUAL, margin: US
 const LEAST_SHEET_PX = { across: 320, down: 160 };
 const LEAST_PX: Readonly<Record<PaneId, number>> = { tools: 120, figures: 88, margin: 240 };
 const MOST_TOOLS_PX = 320;
+/** Part of a low window that the figures take at most unless somebody wants them larger. */
+const MOST_USUAL_FIGURES = 0.32;
 /** Height of the bar over the desk. */
 const BAR_PX = 47;
 
@@ -56,7 +61,7 @@ function ranged(least: number, most: number, usual: number): PaneRange {
 /** The sizes that suit the widths of the window named in the styles. */
 function usualPx(pane: PaneId, { widthPx, heightPx }: WindowSize): number {
   // Upright the heads and buttons of the tables take several rows, and there is height enough for the figures too.
-  if (pane === 'figures') return heightPx > widthPx ? 344 : 232;
+  if (pane === 'figures') return Math.min(heightPx > widthPx ? 344 : 232, MOST_USUAL_FIGURES * heightPx);
   if (pane === 'tools') return widthPx < 1080 ? 168 : 188;
   // On a tablet held upright the sheet would otherwise be as narrow as the notes.
   if (widthPx < 960) return 288;

@@ -54,7 +54,7 @@ export function JobProgress({ drawing }: { drawing: DrawingDto }) {
     );
   const share = job.pagesTotal ? (job.pagesDone + job.pageProgress) / job.pagesTotal : null;
   return (
-    <div className="mt-1.5 max-w-[360px]">
+    <div className="mt-1.5 max-w-[22.5rem]">
       <p role="status" className="m-0 mb-1 text-ink-2">
         {jobText(job)}
       </p>

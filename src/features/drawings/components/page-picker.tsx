@@ -15,7 +15,7 @@ export function PagePicker({ sheets, chosen }: { sheets: readonly SheetDto[]; ch
               to={`?sheet=${sheet.pageNumber}`}
               replace
               aria-current={sheet.id === chosen.id ? 'page' : undefined}
-              className="block w-[112px] border border-rule bg-white p-1 text-center text-sm no-underline aria-[current]:border-ink aria-[current]:bg-chosen aria-[current]:font-semibold"
+              className="block w-[7rem] border border-rule bg-white p-1 text-center text-sm no-underline aria-[current]:border-ink aria-[current]:bg-chosen aria-[current]:font-semibold"
             >
               <Thumbnail sheet={sheet} className="h-[72px] w-full" />
               {text.sheet(sheet.pageNumber)}

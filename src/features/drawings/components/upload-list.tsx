@@ -18,7 +18,7 @@ export function UploadList({ uploads }: { uploads: readonly Upload[] }) {
             key={upload.id}
             className="flex flex-wrap items-start gap-x-3 gap-y-1 border-b border-rule-2 py-2 last:border-b-0"
           >
-            <div className="min-w-0 flex-1 basis-[220px]">
+            <div className="min-w-0 flex-1 basis-[13.75rem]">
               <p className="m-0 font-semibold break-words">{upload.file.name}</p>
               <UploadProgress upload={upload} />
             </div>

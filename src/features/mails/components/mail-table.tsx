@@ -56,7 +56,7 @@ function MailRow({ mail, hasActions }: { mail: MailDto; hasActions: boolean }) {
   const { state, attempts } = mail;
   return (
     <tr>
-      <Cell className="sm:min-w-[240px]">
+      <Cell className="sm:min-w-[15rem]">
         <Link to={paths.mail(mail.id)} className="touch inline-flex items-center">
           {mail.subject}
         </Link>

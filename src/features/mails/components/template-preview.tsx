@@ -4,12 +4,11 @@ import { Button } from '#client/components/button.tsx';
 import { SelectField } from '#client/components/field.tsx';
 import { Panel } from '#client/components/panel.tsx';
 import { useMedia } from '#client/lib/use-media.ts';
+import { NARROW_QUERY } from '#client/lib/width-queries.ts';
 import { mailsText as text } from '#client/text/mails.ts';
 import type { MailKind, MailTemplateDto } from '#shared/contract/mails.ts';
 import { mailTemplatesQuery } from '../api/mail-queries.ts';
 
-/** Where the list of kinds would stand above the mail and push it out of sight. */
-const NARROW = '(max-width: 767.98px)';
 /** The body's own margin, and that of its last paragraph. */
 const BELOW_PX = 24;
 type View = 'html' | 'text';
@@ -17,7 +16,8 @@ type View = 'html' | 'text';
 /** The kinds of mail at the left, and the chosen one as it arrives. */
 export function TemplatePreview() {
   const { data: templates } = useSuspenseQuery(mailTemplatesQuery());
-  const narrow = useMedia(NARROW);
+  // The list of kinds would stand above the mail there, and push it out of sight.
+  const narrow = useMedia(NARROW_QUERY);
   const [kind, setKind] = useState(templates[0]?.kind);
   const [view, setView] = useState<View>('html');
   const shown = templates.find((template) => template.kind === kind);
@@ -25,7 +25,7 @@ export function TemplatePreview() {
   const kinds = templates.map((template) => template.kind);
   const Choice = narrow ? KindSelect : KindList;
   return (
-    <div className="grid items-start gap-4 md:grid-cols-[240px_minmax(0,1fr)]">
+    <div className="grid items-start gap-4 md:grid-cols-[15rem_minmax(0,1fr)]">
       <Choice kinds={kinds} chosen={shown.kind} onChoose={setKind} />
       <Preview template={shown} view={view} onView={setView} />
     </div>

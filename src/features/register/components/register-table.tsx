@@ -10,7 +10,7 @@ export function RegisterTable({ rows, isBusy }: { rows: readonly RegisterRow[]; 
       <Table caption={text.caption}>
         <thead className="max-sm:sr-only">
           <tr>
-            <HeadCell className="w-[88px]">
+            <HeadCell className="w-[5.5rem]">
               <span className="sr-only">{text.sheet}</span>
             </HeadCell>
             <HeadCell>{text.name}</HeadCell>

@@ -83,7 +83,7 @@ function Item({
               <input
                 type="radio"
                 name={group}
-                className="size-[14px] shrink-0 accent-ink pointer-coarse:size-5"
+                className="size-[0.875rem] shrink-0 accent-ink pointer-coarse:size-5"
                 checked={answer === each}
                 onChange={() => onAnswer({ itemId: item.id, answer: each, remark })}
               />

@@ -97,7 +97,7 @@ function SendForm({
         label={text.dueOn}
         hint={text.dueOnHint}
         type="date"
-        className="max-w-[220px]"
+        className="max-w-[13.75rem]"
         value={dueOn}
         onChange={(event) => setDueOn(event.target.value)}
       />

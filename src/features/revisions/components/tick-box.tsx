@@ -21,7 +21,7 @@ export function TickBox({ figureKey }: { figureKey: string }) {
         data-tick
         aria-label={label}
         title={label}
-        className="m-0 size-[14px] shrink-0 accent-good pointer-coarse:size-5"
+        className="m-0 size-[0.875rem] shrink-0 accent-good pointer-coarse:size-5"
         checked={work.ticked.has(figureKey)}
         onChange={(event) => tick(event.target.checked)}
         onKeyDown={goBeside}
