@@ -5,7 +5,8 @@ import type {
   SheetFact,
 } from '#shared/text/calculation-sheet/content.ts';
 import { drawTable } from './draw-table.ts';
-import { drawLine, GREY, INK, LEADING, mm, type PageFlow, RULE, TEXT_PT } from './page-flow.ts';
+import { drawLine, LEADING, mm, type PageFlow, TEXT_PT } from './page-flow.ts';
+import { GREY, INK, RULE } from './print-colours.ts';
 import { textLines } from './text-lines.ts';
 
 const AFTER_PT = 5;

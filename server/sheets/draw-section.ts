@@ -1,19 +1,10 @@
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { SheetContent } from '#shared/text/calculation-sheet/content.ts';
+import { placeFigureLabels } from '#shared/text/calculation-sheet/figure-labels.ts';
 import type { SectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
-import { LINE_LOOKS, POINT_COLOUR } from './line-looks.ts';
-import {
-  type Doc,
-  drawLine,
-  FOOT_MM,
-  GREY,
-  INK,
-  LEADING,
-  MARGIN_MM,
-  mm,
-  type Paper,
-  pageSize,
-} from './page-flow.ts';
+import { LINE_LOOKS, labelColour, POINT_COLOUR } from './line-looks.ts';
+import { type Doc, drawLine, FOOT_MM, LEADING, MARGIN_MM, mm, type Paper, pageSize } from './page-flow.ts';
+import { GREY, INK } from './print-colours.ts';
 import type { SheetFonts } from './sheet-fonts.ts';
 import { textLines } from './text-lines.ts';
 
@@ -71,7 +62,8 @@ export function drawSectionPage(
   const place = figurePlace(paper, figure.crop);
   doc.save().rect(place.x, place.y, place.widthPt, place.heightPt).clip();
   if (scan) doc.image(scan, place.x, place.y, { width: place.widthPt, height: place.heightPt });
-  drawTraces(doc, say, figure, place);
+  drawTraces(doc, figure, place);
+  drawLabels(doc, fonts, figure, place);
   doc.restore();
   doc.lineWidth(0.6).strokeColor(INK).rect(place.x, place.y, place.widthPt, place.heightPt).stroke();
   drawBelow(doc, say, figure, place);
@@ -96,7 +88,7 @@ const teller =
     return lines.length * sizePt * LEADING;
   };
 
-function drawTraces(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlace): void {
+function drawTraces(doc: Doc, figure: SectionFigure, place: FigurePlace): void {
   const [left, top] = figure.crop;
   const on = ([x, y]: SheetPoint): [number, number] => [
     place.x + (x - left) * place.scale,
@@ -120,11 +112,7 @@ function drawTraces(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlac
     path(profile);
     doc.stroke();
   }
-  for (const line of figure.lines) {
-    const [first] = line.points;
-    if (first && line.label) labelAt(doc, say, line.label, on(first), LINE_LOOKS[line.kind].colour);
-  }
-  for (const { name, at } of figure.knownPoints) {
+  for (const { at } of figure.knownPoints) {
     const [x, y] = on(at);
     doc
       .lineWidth(0.7)
@@ -134,27 +122,26 @@ function drawTraces(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlac
       .moveTo(x, y - 4)
       .lineTo(x, y + 4)
       .stroke();
-    // Below, since heads of lines that end at a known point stand above.
-    labelAt(doc, say, name, [x, y + 2 * LABEL_PT], INK);
   }
-  for (const { name, at } of figure.points) {
+  for (const { at } of figure.points) {
     const [x, y] = on(at);
     doc.lineWidth(0.9).strokeColor(POINT_COLOUR).circle(x, y, 2.4).stroke();
-    labelAt(doc, say, name, [x, y], POINT_COLOUR);
   }
 }
 
-/** A label beside a place, on a pale ground, so that it can be read over the scan. */
-function labelAt(doc: Doc, say: Say, text: string, [x, y]: [number, number], colour: string): void {
-  const width = doc.fontSize(LABEL_PT).widthOfString(text);
-  doc
-    .save()
-    .fillColor('#ffffff', 0.8)
-    .rect(x + 3, y - LABEL_PT - 2, width + 3, LABEL_PT + 2)
-    .fill()
-    .restore();
-  doc.fillOpacity(1);
-  say(text, x + 4, y - LABEL_PT - 2, { colour });
+/** Names and heads, each on a pale ground, so that it can be read over the scan. */
+function drawLabels(doc: Doc, fonts: SheetFonts, figure: SectionFigure, place: FigurePlace): void {
+  const lineOf = (text: string) => textLines(fonts, text, 'plain', LABEL_PT, Number.POSITIVE_INFINITY)[0]!;
+  const setting = { scale: place.scale, letters: LABEL_PT, widthOf: (text: string) => lineOf(text).widthPt };
+  for (const { text, of, left, top, width, height } of placeFigureLabels(figure, setting)) {
+    const line = lineOf(text);
+    const [x, y] = [place.x + left, place.y + top];
+    doc.save().fillColor('#ffffff', 0.8).rect(x, y, width, height).fill().restore();
+    doc.fillOpacity(1);
+    // Capitals and figures stand seven tenths of their size above the base line, which is in the middle of the box then.
+    const base = y + height / 2 + 0.35 * LABEL_PT;
+    drawLine(doc, line, x + (width - line.widthPt) / 2, base - LABEL_PT, LABEL_PT, labelColour(of));
+  }
 }
 
 function drawBelow(doc: Doc, say: Say, figure: SectionFigure, place: FigurePlace): void {

@@ -1,5 +1,6 @@
 import type { SheetBlock } from '#shared/text/calculation-sheet/content.ts';
-import { drawLine, GREY, INK, LEADING, type PageFlow, RULE } from './page-flow.ts';
+import { drawLine, LEADING, type PageFlow } from './page-flow.ts';
+import { GREY, INK, RULE } from './print-colours.ts';
 import { type TextLine, textLines } from './text-lines.ts';
 
 type Table = Extract<SheetBlock, { kind: 'table' }>;

@@ -1,4 +1,6 @@
 import type { LineKind } from '#shared/contract/document.ts';
+import type { FigureLabel } from '#shared/text/calculation-sheet/figure-labels.ts';
+import { INK } from './print-colours.ts';
 
 /** How a kind of line is printed: colour as on the screen, and a dash of its own, so that a grey print tells them apart. */
 export const LINE_LOOKS: Record<LineKind, { colour: string; widthPt: number; dashPt: readonly number[] }> = {
@@ -14,3 +16,9 @@ export const LINE_LOOKS: Record<LineKind, { colour: string; widthPt: number; das
 };
 /** Reading points and profiles. */
 export const POINT_COLOUR = '#6d2a78';
+
+/** A label has the colour of what it belongs to. */
+export function labelColour(of: FigureLabel['of']): string {
+  if (of === 'point') return POINT_COLOUR;
+  return of === 'knownPoint' ? INK : LINE_LOOKS[of].colour;
+}

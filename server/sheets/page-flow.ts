@@ -1,4 +1,5 @@
 import type PDFKit from 'pdfkit';
+import { INK } from './print-colours.ts';
 import type { FontStyle, SheetFonts } from './sheet-fonts.ts';
 import { type TextLine, textLines } from './text-lines.ts';
 
@@ -14,9 +15,6 @@ export const MARGIN_MM = 14;
 /** Kept free at the foot for page number, revision and hash. */
 export const FOOT_MM = 10;
 const GAP_MM = 10;
-export const INK = '#1c2733';
-export const GREY = '#5b6570';
-export const RULE = '#b9c2c8';
 
 /** Size of a page in points. */
 export function pageSize(paper: Paper, lies: boolean): [number, number] {

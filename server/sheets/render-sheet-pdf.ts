@@ -2,7 +2,8 @@ import PDFDocument from 'pdfkit';
 import type { SheetContent } from '#shared/text/calculation-sheet/content.ts';
 import { drawChapter } from './draw-blocks.ts';
 import { drawSectionPage } from './draw-section.ts';
-import { type Doc, drawLine, GREY, MARGIN_MM, mm, type Paper, startTextPages } from './page-flow.ts';
+import { type Doc, drawLine, MARGIN_MM, mm, type Paper, startTextPages } from './page-flow.ts';
+import { GREY } from './print-colours.ts';
 import { createSheetFonts, type SheetFonts } from './sheet-fonts.ts';
 import { textLines } from './text-lines.ts';
 

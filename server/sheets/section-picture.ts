@@ -3,8 +3,9 @@ import { fileURLToPath } from 'node:url';
 import { createCanvas, GlobalFonts, type SKRSContext2D } from '@napi-rs/canvas';
 import sharp from 'sharp';
 import type { SheetPoint } from '#shared/contract/document.ts';
-import type { FigurePoint, SectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
-import { LINE_LOOKS, POINT_COLOUR } from './line-looks.ts';
+import { placeFigureLabels } from '#shared/text/calculation-sheet/figure-labels.ts';
+import type { SectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
+import { LINE_LOOKS, labelColour, POINT_COLOUR } from './line-looks.ts';
 import type { GreyRaster } from './scan-picture.ts';
 
 /** At most this large where it is shown, in CSS pixels; the file is twice as fine. */
@@ -92,7 +93,7 @@ function drawTraces(figure: SectionFigure, pixels: { width: number; height: numb
   context.setLineDash([]);
   for (const profile of figure.profiles) stroke(context, profile.map(on), POINT_COLOUR, PX_PER_PT);
   for (const { at } of figure.points) drawPoint(context, on(at));
-  drawLabels(context, figure, on);
+  drawLabels(context, figure, scale);
   return canvas.toBuffer('image/png');
 }
 
@@ -119,40 +120,22 @@ function drawPoint(context: SKRSContext2D, [x, y]: Place): void {
   context.stroke();
 }
 
-/** Names of points first, then heads of lines; one that would cover another is left out. */
-function drawLabels(context: SKRSContext2D, figure: SectionFigure, on: (at: SheetPoint) => Place): void {
+function drawLabels(context: SKRSContext2D, figure: SectionFigure, scale: number): void {
   registerFont();
   context.font = `${LABEL_PX}px "${FONT}"`;
-  const taken: Box[] = [];
-  const heads = figure.lines.flatMap(({ label, points: [first], kind }) =>
-    first && label ? [{ name: label, at: first, colour: LINE_LOOKS[kind].colour }] : [],
-  );
-  const points = figure.points.map((point: FigurePoint) => ({ ...point, colour: POINT_COLOUR }));
-  for (const { name, at, colour } of [...points, ...heads]) {
-    const [x, y] = on(at);
-    const box = {
-      x: x + 5,
-      y: y - LABEL_PX - 3,
-      width: context.measureText(name).width + 4,
-      height: LABEL_PX + 3,
-    };
-    if (taken.some((other) => overlap(box, other))) continue;
-    taken.push(box);
+  context.textAlign = 'center';
+  const widthOf = (text: string) => context.measureText(text).width;
+  const labels = placeFigureLabels(withoutKnownPoints(figure), { scale, letters: LABEL_PX, widthOf });
+  for (const { text, of, left, top, width, height } of labels) {
     context.fillStyle = 'rgba(255, 255, 255, 0.8)';
-    context.fillRect(box.x, box.y, box.width, box.height);
-    context.fillStyle = colour;
-    context.fillText(name, box.x + 2, y - 5);
+    context.fillRect(left, top, width, height);
+    context.fillStyle = labelColour(of);
+    context.fillText(text, left + width / 2, top + height / 2 + 0.35 * LABEL_PX);
   }
 }
 
-interface Box {
-  x: number;
-  y: number;
-  width: number;
-  height: number;
-}
-const overlap = (a: Box, b: Box) =>
-  a.x < b.x + b.width && b.x < a.x + a.width && a.y < b.y + b.height && b.y < a.y + a.height;
+/** They are not drawn: by the picture a mail is known, and nothing is measured in it. */
+const withoutKnownPoints = (figure: SectionFigure): SectionFigure => ({ ...figure, knownPoints: [] });
 
 /** The product's own fonts, so that labels do not depend on what the machine has. */
 function registerFont(): void {

@@ -1,6 +1,7 @@
 import { apiUrl } from '#client/lib/http.ts';
 import type { LineKind, SheetPoint } from '#shared/contract/document.ts';
 import type { SheetDto } from '#shared/contract/drawings.ts';
+import { type FigureLabel, placeFigureLabels } from '#shared/text/calculation-sheet/figure-labels.ts';
 import type { SectionFigure } from '#shared/text/calculation-sheet/section-figure.ts';
 
 /** Colour and dash of each kind, dashes in thousandths of the figure's width. */
@@ -50,43 +51,71 @@ export function SheetFigure({
             strokeDasharray={LOOKS[kind].dash.map((length) => length * unit).join(' ')}
           />
         ))}
-        {figure.lines.map(({ id, kind, points: [first], label: text }) =>
-          first && text ? (
-            <Label key={id} at={first} unit={unit} colour={LOOKS[kind].colour} text={text} />
-          ) : null,
-        )}
-        {figure.points.map(({ name, at }) => (
-          <g key={`${name} ${at.join()}`}>
-            <circle
-              cx={at[0]}
-              cy={at[1]}
-              r={4 * unit}
-              fill="none"
-              stroke="var(--color-point)"
-              strokeWidth={1.6 * unit}
-            />
-            <Label at={at} unit={unit} colour="var(--color-point)" text={name} />
-          </g>
+        {figure.profiles.map((profile) => (
+          <polyline
+            key={path(profile)}
+            points={path(profile)}
+            fill="none"
+            stroke="var(--color-point)"
+            strokeWidth={1.4 * unit}
+          />
         ))}
+        {figure.knownPoints.map(({ name, at: [x, y] }) => (
+          <path
+            key={`${name} ${x} ${y}`}
+            d={`M${x - 7 * unit} ${y}h${14 * unit}m${-7 * unit} ${-7 * unit}v${14 * unit}`}
+            stroke="var(--color-ink)"
+            strokeWidth={1.2 * unit}
+          />
+        ))}
+        {figure.points.map(({ name, at }) => (
+          <circle
+            key={`${name} ${at.join()}`}
+            cx={at[0]}
+            cy={at[1]}
+            r={4 * unit}
+            fill="none"
+            stroke="var(--color-point)"
+            strokeWidth={1.6 * unit}
+          />
+        ))}
+        <Labels figure={figure} unit={unit} />
       </svg>
     </figure>
   );
 }
 
-function Label({ at, unit, colour, text }: { at: SheetPoint; unit: number; colour: string; text: string }) {
-  return (
+/** Size of the letters in thousandths of the figure's width, and about what a letter of a name is wide; figures are narrower. */
+const LETTERS = 13;
+const LETTER_WIDTH = 0.66;
+
+function Labels({ figure, unit }: { figure: SectionFigure; unit: number }) {
+  const labels = placeFigureLabels(figure, {
+    scale: 1 / unit,
+    letters: LETTERS,
+    widthOf: (text) => text.length * LETTER_WIDTH * LETTERS,
+  });
+  const [left, top] = figure.crop;
+  return labels.map((label) => (
     <text
-      x={at[0] + 6 * unit}
-      y={at[1] - 5 * unit}
-      fontSize={13 * unit}
-      fill={colour}
+      key={`${label.left} ${label.top}`}
+      x={left + (label.left + label.width / 2) * unit}
+      y={top + (label.top + label.height / 2 + 0.35 * LETTERS) * unit}
+      textAnchor="middle"
+      fontSize={LETTERS * unit}
+      fill={labelColour(label.of)}
       stroke="white"
       strokeWidth={3 * unit}
       paintOrder="stroke"
     >
-      {text}
+      {label.text}
     </text>
-  );
+  ));
+}
+
+function labelColour(of: FigureLabel['of']): string {
+  if (of === 'point') return 'var(--color-point)';
+  return of === 'knownPoint' ? 'var(--color-ink)' : LOOKS[of].colour;
 }
 
 /** The tiles of the coarsest level that is fine enough, as far as they meet the part that is shown. */

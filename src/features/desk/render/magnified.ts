@@ -1,7 +1,7 @@
 import { sheetPx } from '#shared/compute/frames.ts';
+import { piecesIn } from '#shared/compute/geometry/clip-line.ts';
 import type { DocumentEntity, FlowNetDocument } from '#shared/contract/document.ts';
 import { type SheetFrame, seenFrame, toScreen, type Viewport } from '../model/viewport.ts';
-import { piecesIn } from './clip-line.ts';
 import { frameOfLine } from './line-frame.ts';
 import { COLOURS, lookOf } from './line-look.ts';
 import { framesMeet } from './seen-by.ts';

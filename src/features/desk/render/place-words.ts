@@ -1,16 +1,9 @@
+import { type Placeable, type Placed, placeApart, rectAbout } from '#shared/compute/geometry/place-apart.ts';
+import { type PlacesAlong, placesAlong } from '#shared/compute/geometry/places-along.ts';
+import { createTakenSpace, type Rect } from '#shared/compute/geometry/taken-space.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
-import {
-  LABEL_HEIGHT_PX,
-  LABEL_OFFSETS,
-  labelWidthPx,
-  type Placeable,
-  type Placed,
-  placeApart,
-  rectAbout,
-} from './label-layout.ts';
-import { type PlacesAlong, placesAlong } from './places-along.ts';
-import type { SceneItem, SceneMark } from './scene.ts';
-import { createTakenSpace, type Rect } from './taken-space.ts';
+import { LABEL_HEIGHT_PX, LABEL_OFFSETS, labelWidthPx } from './label-layout.ts';
+import type { SceneItem, SceneLine, SceneMark } from './scene.ts';
 
 const POINT_SIZE_PX = 16;
 const NAME_HEIGHT_PX = 15;
@@ -74,7 +67,8 @@ function placesFor(items: readonly SceneItem[], marks: readonly SceneMark[], zoo
     ...points.map(({ at }) => rectAbout(at[0] * zoom, at[1] * zoom, POINT_SIZE_PX, POINT_SIZE_PX)),
     ...ofShape(marks, 'doubt').map((mark) => doubtRect(mark, zoom)),
   ]);
-  const along = placesAlong(items, zoom);
+  const lines = () => items.filter((item): item is SceneLine => item.shape === 'line');
+  const along = placesAlong(lines, zoom);
   const places = new Map<string, { own: SheetPoint; placed: Placed | null }>();
   for (const group of [
     points,
@@ -128,7 +122,7 @@ function placeable(mark: SceneMark, zoom: number, along: PlacesAlong): Placeable
     const size = { widthPx: labelWidthPx(mark.text), heightPx: LABEL_HEIGHT_PX };
     if (!mark.id.startsWith(LABEL_PREFIX)) return { ...at, ...size, offsets: LABEL_OFFSETS };
     const lineId = mark.id.slice(LABEL_PREFIX.length);
-    const elsewhere = () => along.of(lineId, mark.at, mark.text);
+    const elsewhere = () => along.of(lineId, mark.at, size);
     return { ...at, ...size, offsets: LABEL_OFFSETS, elsewhere, mayGo: true };
   }
   const widthPx = mark.text.length * NAME_CHARACTER_PX;

@@ -1,7 +1,7 @@
 import { Polyline } from 'fabric';
+import { type LinePiece, piecesIn } from '#shared/compute/geometry/clip-line.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
 import type { SheetFrame } from '../model/viewport.ts';
-import { type LinePiece, piecesIn } from './clip-line.ts';
 import { drawEndMark } from './end-mark.ts';
 import { frameOfLine } from './line-frame.ts';
 import { HALO } from './line-look.ts';

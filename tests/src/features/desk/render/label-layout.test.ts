@@ -1,9 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { boxOf, LABEL_HEIGHT_PX, labelWidthPx } from '#client/features/desk/render/label-layout.ts';
+import { LABEL_HEIGHT_PX, labelWidthPx } from '#client/features/desk/render/label-layout.ts';
 import { lookOf } from '#client/features/desk/render/line-look.ts';
 import { LABEL_PREFIX, placeWords } from '#client/features/desk/render/place-words.ts';
 import type { SceneItem, SceneLine, SceneMark } from '#client/features/desk/render/scene.ts';
-import { overlap } from '#client/features/desk/render/taken-space.ts';
+import { boxOf } from '#shared/compute/geometry/place-apart.ts';
+import { overlap } from '#shared/compute/geometry/taken-space.ts';
 import type { SheetPoint } from '#shared/contract/document.ts';
 
 function lineOf(id: string, points: SheetPoint[]): SceneLine {

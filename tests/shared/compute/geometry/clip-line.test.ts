@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { piecesIn } from '#client/features/desk/render/clip-line.ts';
+import { piecesIn } from '#shared/compute/geometry/clip-line.ts';
 
 const frame = [0, 0, 100, 100] as const;
 

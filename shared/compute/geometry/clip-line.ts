@@ -1,5 +1,7 @@
 import type { SheetPoint } from '#shared/contract/document.ts';
-import type { SheetFrame } from '../model/viewport.ts';
+
+/** Left, top, width and height. */
+export type ClipFrame = readonly [number, number, number, number];
 
 /** A piece of a line inside a frame; `start`: distance along the whole line at which it begins. */
 export type LinePiece = { readonly points: SheetPoint[]; readonly start: number };
@@ -8,7 +10,7 @@ export type LinePiece = { readonly points: SheetPoint[]; readonly start: number 
  * The pieces of a polyline that lie in a frame. A line seen at forty times its size is hundreds of thousands of screen
  * pixels long, and dashing or hatching what is out of sight would take longer than a frame.
  */
-export function piecesIn(points: readonly SheetPoint[], frame: SheetFrame): LinePiece[] {
+export function piecesIn(points: readonly SheetPoint[], frame: ClipFrame): LinePiece[] {
   const pieces: LinePiece[] = [];
   let open: LinePiece | null = null;
   let along = 0;
@@ -35,7 +37,7 @@ export function piecesIn(points: readonly SheetPoint[], frame: SheetFrame): Line
 }
 
 /** True when both ends lie beyond the same side. */
-function liesBeside(a: SheetPoint, b: SheetPoint, frame: SheetFrame): boolean {
+function liesBeside(a: SheetPoint, b: SheetPoint, frame: ClipFrame): boolean {
   const [right, bottom] = [frame[0] + frame[2], frame[1] + frame[3]];
   return (
     (a[0] < frame[0] && b[0] < frame[0]) ||
@@ -52,7 +54,7 @@ function between(a: SheetPoint, b: SheetPoint, t: number): SheetPoint {
 }
 
 /** Part of a segment inside a frame as two numbers from 0 to 1; null when none is. Liang and Barsky (1984). */
-export function clippedPart(a: SheetPoint, b: SheetPoint, frame: SheetFrame): [number, number] | null {
+export function clippedPart(a: SheetPoint, b: SheetPoint, frame: ClipFrame): [number, number] | null {
   const [left, top, width, height] = frame;
   const dx = b[0] - a[0];
   const dy = b[1] - a[1];
