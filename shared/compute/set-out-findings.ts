@@ -27,9 +27,9 @@ type SetOutFigures = {
 
 /**
  * Questions a set-out that fits but does not go together: a residual that no paper makes, values typed beside a
- * distance that deny it, one point that alone spoils the fit, a scale bar that denies it, scales that are not as declared, a scale other than the stated one. `residual` in the
- * document's length unit, null where there is none; `impliedScale` the n of 1:n along the level, null where the
- * resolution is unknown.
+ * distance that deny it, one point that alone spoils the fit, a scale bar that denies it, scales that are not as
+ * declared, a scale other than the stated one. `residual` in the document's length unit, null where there is none;
+ * `impliedScale` the n of 1:n along the level, null where the resolution is unknown.
  */
 export function setOutFindings(
   document: FlowNetDocument,
@@ -76,8 +76,12 @@ function declaredFindings(
   grounds: FitGrounds,
 ): Finding[] {
   const shape = lostShapeOf(setOut);
-  const places = controlPlaces(entitiesOf(document, 'knownPoint'));
-  return shape === null ? twoScaleFindings(fit) : questionShape(places, shape, fit, grounds);
+  if (shape === null) return twoScaleFindings(fit);
+  const points = entitiesOf(document, 'knownPoint');
+  const hasCheckPoint = points.some(
+    ({ value }) => value.use === 'check' && value.offset !== null && value.elevation !== null,
+  );
+  return questionShape(controlPlaces(points), shape, fit, grounds, hasCheckPoint);
 }
 
 function twoScaleFindings({ along, up }: FittedSection): Finding[] {

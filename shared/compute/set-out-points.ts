@@ -20,6 +20,7 @@ import {
   similarityScale,
 } from '#shared/compute/similarity.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
+import type { Finding } from '#shared/contract/reading.ts';
 
 type KnownPoint = { id: string; value: EntityOf<'knownPoint'> };
 
@@ -38,6 +39,23 @@ const SIMILARITY_UNKNOWNS = 4;
  * have two scales is fitted with two.
  */
 export function fitByPoints(points: readonly KnownPoint[], setOut: EntityOf<'setOut'>): SetOutFit {
+  const fit = fitByUsed(points, setOut);
+  const checking = points.filter(({ value }) => value.use === 'check' && isKnown(value)).length;
+  return fit.state === 'incomplete' && checking > 0
+    ? { ...fit, finding: alsoOf(fit.finding, checking) }
+    : fit;
+}
+
+/** Points enough may be there, but only to check. */
+function alsoOf(finding: Finding, checking: number): Finding {
+  const more = checking === 1 ? 'A known point only checks' : `${checking} known points only check`;
+  return {
+    ...finding,
+    text: `${finding.text} ${more} the fit: say at “Use” if ${checking === 1 ? 'it' : 'they'} should set the scale.`,
+  };
+}
+
+function fitByUsed(points: readonly KnownPoint[], setOut: EntityOf<'setOut'>): SetOutFit {
   const used = points.filter(isUsed);
   const places = used.map(placeOf);
   const needed = SIMILARITY_UNKNOWNS - (setOut.level === 'sheet' ? 1 : 0);
@@ -86,7 +104,11 @@ export function controlPlaces(points: readonly KnownPoint[]): KnownPlace[] {
 }
 
 function isUsed({ value }: KnownPoint): boolean {
-  return value.use === 'fit' && (value.offset !== null || value.elevation !== null);
+  return value.use === 'fit' && isKnown(value);
+}
+
+function isKnown({ offset, elevation }: EntityOf<'knownPoint'>): boolean {
+  return offset !== null || elevation !== null;
 }
 
 /** A known point as equations of a fit. */

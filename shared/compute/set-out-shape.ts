@@ -65,16 +65,17 @@ export function fitByShape(
 }
 
 /**
- * Questions a shape that the known points do not bear out: with no figure left over nothing checks it, one scale that
- * meets the points as well makes it needless, and paper does not stretch or slant by very much.
+ * Questions a shape that the known points do not bear out: with no figure left over only a check point checks it, one
+ * scale that meets the points as well makes it needless, and paper does not stretch or slant by very much.
  */
 export function questionShape(
   places: readonly KnownPlace[],
   shape: LostShape,
   fit: FittedSection,
   grounds: FitGrounds,
+  hasCheckPoint: boolean,
 ): Finding[] {
-  if (grounds.redundant === 0) return [question('shapeUnchecked', UNCHECKED[shape])];
+  if (grounds.redundant === 0) return hasCheckPoint ? [] : [question('shapeUnchecked', UNCHECKED[shape])];
   const wrong = shape === 'stretchedPaper' ? tooMuchStretch(fit) : [];
   if (wrong.length > 0) return wrong;
   return isBetterThanOneScale(places, fit, grounds) ? [] : [question('shapeNotShown', NEEDLESS[shape])];

@@ -100,6 +100,19 @@ describe.each([
     expect(reading.map).toBeNull();
   });
 
+  it('says so when points enough are there but only check', () => {
+    const points = pointsBy(sectionOfPlace).map((point, i) => ({
+      ...point,
+      use: i < 2 ? ('fit' as const) : ('check' as const),
+    }));
+    const { reading, findings } = readSetOut(sectionOf(points, { scales }));
+    expect(reading.state).toBe('incomplete');
+    expect(findings[0]?.text).toMatch(/ 4 known points only check the fit: say at “Use” if they should/);
+    const one = readSetOut(sectionOf(points.slice(0, 3), { scales }));
+    expect(one.findings[0]?.text).toMatch(/ A known point only checks the fit: say at “Use” if it should/);
+    expect(readSetOut(sectionOf(points.slice(0, 2), { scales })).findings[0]?.text).not.toContain('Use');
+  });
+
   it('is refused when its points lie on one line', () => {
     const line = SHEET.map((_, i): Pair => [300 + 300 * i, 500 + 100 * i]);
     expect(codes(sectionOf(pointsBy(sectionOfPlace, line), { scales }))).toContain('shapeUndetermined');
@@ -108,6 +121,15 @@ describe.each([
   it('is questioned while nothing checks it', () => {
     const exact = sectionOf(pointsBy(sectionOfPlace, SHEET.slice(0, needed)), { scales });
     expect(codes(exact)).toEqual(['shapeUnchecked']);
+    const beside = (shift: number) => {
+      const [x, y] = SHEET[needed]!;
+      const [offset, elevation] = sectionOfPlace([x, y]);
+      const check = { ...known(x, y, offset + shift, elevation), use: 'check' as const };
+      return sectionOf([...pointsBy(sectionOfPlace, SHEET.slice(0, needed)), check], { scales });
+    };
+    // A check point that agrees checks it as well as one more in the fit, and one that does not is told.
+    expect(codes(beside(0))).toEqual([]);
+    expect(codes(beside(5))).toContain('residualLarge');
   });
 
   it('gives every place of the sheet its place in the section, and back', () => {

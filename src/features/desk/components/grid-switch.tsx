@@ -20,7 +20,8 @@ export function GridSwitch({ store }: { store: DeskStore }) {
       disabled={!isSetOut}
       title={isSetOut ? text.title : text.waiting}
       className={classNames(
-        'touch rounded-sheet border border-rule px-2.5 py-1 leading-[1.4] hover:bg-hover disabled:opacity-55',
+        // Over the sheet, so that its ground stays when it cannot be pressed.
+        'touch rounded-sheet border border-rule px-2.5 py-1 leading-[1.4] hover:bg-hover disabled:bg-film disabled:text-ink-2',
         shown && isSetOut ? 'bg-chosen font-semibold' : 'bg-film',
       )}
       onClick={toggleGrid}

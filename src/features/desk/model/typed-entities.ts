@@ -10,13 +10,12 @@ import {
   type TracedLine,
 } from '#shared/contract/document.ts';
 import { MAX_SHEET_PX } from '#shared/contract/limits.ts';
+import { nextKnownPointUse } from './known-point-use.ts';
 
 const FEWEST_POINTS = 2;
 const MOST_POINTS = 5000;
 /** A typed place is kept finer than a traced one, so that the figures typed come back. */
 const PER_PIXEL = 10_000;
-/** Two known points set a section out; more of them check it. */
-const FIT_POINTS = 2;
 
 /** A finished line of typed points, offsets and elevations where there is a map, else pixels; or why there is none. */
 export function typedLine(
@@ -51,8 +50,7 @@ export function typedKnownPoint(
   name: string,
   [x, y]: readonly [number, number],
 ): EntityOf<'knownPoint'> {
-  const fits = entitiesOf(document, 'knownPoint').filter(({ value }) => value.use === 'fit');
-  const use = fits.length < FIT_POINTS ? 'fit' : 'check';
+  const use = nextKnownPointUse(document);
   return { kind: 'knownPoint', name, at: [rounded(x), rounded(y)], offset: null, elevation: null, use };
 }
 

@@ -3,15 +3,13 @@ import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import { type EntityOf, entitiesOf, UNSAID } from '#shared/contract/document.ts';
 import type { NoteAnchor } from '#shared/contract/notes.ts';
 import { cellAt } from '../model/cell-places.ts';
+import { nextKnownPointUse } from '../model/known-point-use.ts';
 import { selectOne } from '../model/selection.ts';
 import { dragTo, grabMark, letGo } from './drag.ts';
 import { drawnCrossingAt } from './drawn-crossing.ts';
 import { keptPoint } from './line-points.ts';
 import { markAt, pickAt } from './pick.ts';
 import { rest, stay, type ToolContext, type ToolEvent, type ToolState, type ToolStep } from './tool-types.ts';
-
-/** Two known points set a section out; more of them check it. */
-const FIT_POINTS = 2;
 
 /** Places known points: a click sets one, a press on one moves it. */
 export function knownPointStep(state: ToolState, event: ToolEvent, context: ToolContext): ToolStep {
@@ -23,7 +21,7 @@ export function knownPointStep(state: ToolState, event: ToolEvent, context: Tool
       at: keptPoint(at),
       offset: null,
       elevation: null,
-      use: points.filter((point) => point.value.use === 'fit').length < FIT_POINTS ? 'fit' : 'check',
+      use: nextKnownPointUse(context.document),
     };
     return value;
   });
