@@ -90,6 +90,9 @@ export function placeFigureLabels(figure: SectionFigure, setting: LabelSetting):
   const heads: Wanted[] = figure.lines.flatMap(({ id, kind, label, points: [first] }) => {
     if (first === undefined || label === '') return [];
     const [size, at] = [sized(label), on(first)];
+    const offsets = beside(size, GAP * letters);
+    const isClear = ([dx, dy]: readonly [number, number]) =>
+      !isMistakable(id, [at[0] + dx, at[1] + dy], size);
     return [
       {
         of: kind,
@@ -97,9 +100,8 @@ export function placeFigureLabels(figure: SectionFigure, setting: LabelSetting):
         id,
         ...place(at),
         ...size,
-        offsets: beside(size, GAP * letters).filter(
-          ([dx, dy]) => !isMistakable(id, [at[0] + dx, at[1] + dy], size),
-        ),
+        // A name, as of a boundary, is taken for no head.
+        offsets: OF_ONE_HEAD.has(kind) ? offsets.filter(isClear) : offsets,
         elsewhere: function* () {
           yield* along.of(id, at, size);
           yield* along.over(id, at);

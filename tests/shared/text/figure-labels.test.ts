@@ -112,6 +112,23 @@ describe('labels of the figure of the section', () => {
     }
   });
 
+  it('of boundaries may stand nearer to other lines, as a name is taken for no head', () => {
+    const heads = fence(12, 40);
+    const base = { id: 'base', kind: 'impervious' as const, label: 'Underside of the apron' };
+    const line = {
+      ...base,
+      points: [
+        [100, 100],
+        [540, 100],
+      ] as Array<[number, number]>,
+    };
+    const figure = { ...heads, lines: [...heads.lines, line] };
+    const labels = placeFigureLabels(figure, settingOf(figure));
+    expect(labels.filter(({ of }) => of === 'impervious')).toHaveLength(1);
+    expect(labels).toHaveLength(13);
+    expect(covered(labels)).toEqual([]);
+  });
+
   it('of points are always there, and heads give way to them', () => {
     const figure = { ...fence(12, 40), points: [{ name: 'P1', at: [140, 92] as [number, number] }] };
     const labels = placeFigureLabels(figure, settingOf(figure));
