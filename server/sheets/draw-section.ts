@@ -133,14 +133,13 @@ function drawTraces(doc: Doc, figure: SectionFigure, place: FigurePlace): void {
 function drawLabels(doc: Doc, fonts: SheetFonts, figure: SectionFigure, place: FigurePlace): void {
   const lineOf = (text: string) => textLines(fonts, text, 'plain', LABEL_PT, Number.POSITIVE_INFINITY)[0]!;
   const setting = { scale: place.scale, letters: LABEL_PT, widthOf: (text: string) => lineOf(text).widthPt };
-  for (const { text, of, left, top, width, height } of placeFigureLabels(figure, setting)) {
+  for (const { text, of, left, top, width, height, baseLine } of placeFigureLabels(figure, setting)) {
     const line = lineOf(text);
     const [x, y] = [place.x + left, place.y + top];
     doc.save().fillColor('#ffffff', 0.8).rect(x, y, width, height).fill().restore();
     doc.fillOpacity(1);
-    // Capitals and figures stand seven tenths of their size above the base line, which is in the middle of the box then.
-    const base = y + height / 2 + 0.35 * LABEL_PT;
-    drawLine(doc, line, x + (width - line.widthPt) / 2, base - LABEL_PT, LABEL_PT, labelColour(of));
+    const at = [x + (width - line.widthPt) / 2, place.y + baseLine - LABEL_PT] as const;
+    drawLine(doc, line, ...at, LABEL_PT, labelColour(of));
   }
 }
 

@@ -126,11 +126,11 @@ function drawLabels(context: SKRSContext2D, figure: SectionFigure, scale: number
   context.textAlign = 'center';
   const widthOf = (text: string) => context.measureText(text).width;
   const labels = placeFigureLabels(withoutKnownPoints(figure), { scale, letters: LABEL_PX, widthOf });
-  for (const { text, of, left, top, width, height } of labels) {
+  for (const { text, of, left, top, width, height, baseLine } of labels) {
     context.fillStyle = 'rgba(255, 255, 255, 0.8)';
     context.fillRect(left, top, width, height);
     context.fillStyle = labelColour(of);
-    context.fillText(text, left + width / 2, top + height / 2 + 0.35 * LABEL_PX);
+    context.fillText(text, left + width / 2, baseLine);
   }
 }
 

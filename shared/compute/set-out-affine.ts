@@ -4,9 +4,6 @@ import { determinantOf, inverted, type LinearMap, mapped } from '#shared/compute
 import { sectionMapOfFit } from '#shared/compute/section-map.ts';
 import type { FittedSection } from '#shared/compute/set-out-fit.ts';
 
-/** A scale for each direction, a turn, a shear and two shifts. */
-export const AFFINE_UNKNOWNS = 6;
-
 /**
  * Least-squares affine map from the sheet to the section, for paper that has stretched unevenly or askew: offset and
  * elevation are each a·u + b·v + c of their own, u and v pixels about the middle of the places, and each known figure is

@@ -3,6 +3,7 @@ import { type KnownPlace, knownFigures, rangeOfKnown } from '#shared/compute/kno
 import { type FitGrounds, fittedBy, type SetOutFit } from '#shared/compute/set-out-fit.ts';
 import { fitByScales } from '#shared/compute/set-out-scales.ts';
 import { fitByShape, lostShapeOf } from '#shared/compute/set-out-shape.ts';
+import { unknownsOf } from '#shared/compute/set-out-unknowns.ts';
 import {
   askOffsets,
   askUp,
@@ -26,9 +27,6 @@ type KnownPoint = { id: string; value: EntityOf<'knownPoint'> };
 
 /** Points nearer to each other than this, in pixels, are one point clicked twice. */
 const COINCIDENT_PX = 2;
-
-/** Scale, turn and two shifts. */
-const SIMILARITY_UNKNOWNS = 4;
 
 /**
  * Similarity through the known points of use `fit`, least squares. Clicks are base-raster pixels, typed values the
@@ -58,7 +56,7 @@ function alsoOf(finding: Finding, checking: number): Finding {
 function fitByUsed(points: readonly KnownPoint[], setOut: EntityOf<'setOut'>): SetOutFit {
   const used = points.filter(isUsed);
   const places = used.map(placeOf);
-  const needed = SIMILARITY_UNKNOWNS - (setOut.level === 'sheet' ? 1 : 0);
+  const needed = unknownsOf('equal', setOut.level === 'sheet');
   const marked = points.filter(({ value }) => value.use === 'fit').length;
   if (places.length < 2 || knownFigures(places) < needed)
     return incomplete(marked, knownFigures(places), needed);
@@ -87,7 +85,7 @@ function fitByOneScale(
     .map((mirrored) => fitSimilarity(places, mirrored, turn))
     .filter((fit): fit is Similarity => fit !== null && usable(fit));
   const grounds: FitGrounds = {
-    redundant: knownFigures(places) - SIMILARITY_UNKNOWNS + (turnFromSheet ? 1 : 0),
+    redundant: knownFigures(places) - unknownsOf('equal', turnFromSheet),
     turnFromSheet,
   };
   const [first, second] = fits;
@@ -180,7 +178,7 @@ function settledByResiduals(
   direct: Similarity,
   mirrored: Similarity,
 ): Similarity | null {
-  if (knownFigures(places) <= SIMILARITY_UNKNOWNS) return null;
+  if (knownFigures(places) <= unknownsOf('equal')) return null;
   const directSquares = sumOfSquares(direct, places);
   const mirroredSquares = sumOfSquares(mirrored, places);
   const extent = Math.hypot(rangeOfKnown(places, 0), rangeOfKnown(places, 1));

@@ -13,7 +13,6 @@ import { type SectionMap, sectionMapOfFit } from '#shared/compute/section-map.ts
 import { sectionOfLinear } from '#shared/compute/set-out-affine.ts';
 import type { FittedSection } from '#shared/compute/set-out-fit.ts';
 
-export const PROJECTIVE_UNKNOWNS = 8;
 /** The weights settle in two or three rounds. */
 const ROUNDS = 8;
 /** A place so near to the horizon, as a part of the scale in the middle, cannot be read. */

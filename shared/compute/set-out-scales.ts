@@ -1,6 +1,7 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { type KnownPlace, knownFigures, rangeOfKnown } from '#shared/compute/known-places.ts';
 import { fittedByScales, type SetOutFit } from '#shared/compute/set-out-fit.ts';
+import { unknownsOf } from '#shared/compute/set-out-unknowns.ts';
 import {
   askUp,
   contradiction,
@@ -23,22 +24,18 @@ const LEAST_RANGE_PX = 10;
  */
 export function fitByScales(places: readonly KnownPlace[], setOut: EntityOf<'setOut'>): SetOutFit {
   if (rangeOfKnown(places, 0) === 0 || rangeOfKnown(places, 1) === 0) return oneDirectionOnly();
-  const byPoints = knownFigures(places) >= SCALES_UNKNOWNS ? fitTwoScales(places, null) : null;
+  const byPoints = knownFigures(places) >= unknownsOf(setOut.scales) ? fitTwoScales(places, null) : null;
   if (byPoints === null && setOut.level !== 'sheet') return turnUnknown('two scales and the turn');
   const fit = byPoints ?? fitTwoScales(places, upTurn(setOut));
   if (fit === null || !isUsable(fit, places)) return tooNear();
   if (departureFromUp(fit.rotation, setOut) > UPRIGHT_LIMIT)
     return setOut.upQuarterTurns === null ? askUp() : contradiction();
   if (setOut.offsetsGrow !== null && (setOut.offsetsGrow === 'left') !== fit.mirrored) return contradiction();
-  const unknowns = SCALES_UNKNOWNS - (byPoints === null ? 1 : 0);
   return fittedByScales(fit, {
-    redundant: knownFigures(places) - unknowns,
+    redundant: knownFigures(places) - unknownsOf(setOut.scales, byPoints === null),
     turnFromSheet: byPoints === null,
   });
 }
-
-/** Two scales, the turn and two shifts. */
-const SCALES_UNKNOWNS = 5;
 
 function isUsable({ along, up }: TwoScales, places: readonly KnownPlace[]): boolean {
   return rangeOfKnown(places, 0) / along >= LEAST_RANGE_PX && rangeOfKnown(places, 1) / up >= LEAST_RANGE_PX;

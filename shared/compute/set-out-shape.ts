@@ -1,13 +1,14 @@
 import { makeFinding } from '#shared/compute/findings.ts';
 import { type KnownPlace, knownFigures } from '#shared/compute/known-places.ts';
-import { AFFINE_UNKNOWNS, fitAffine, shearDeg } from '#shared/compute/set-out-affine.ts';
+import { fitAffine, shearDeg } from '#shared/compute/set-out-affine.ts';
 import {
   type FitGrounds,
   type FittedSection,
   type SetOutFit,
   squaresOfMiss,
 } from '#shared/compute/set-out-fit.ts';
-import { fitProjective, PROJECTIVE_UNKNOWNS } from '#shared/compute/set-out-projective.ts';
+import { fitProjective } from '#shared/compute/set-out-projective.ts';
+import { unknownsOf } from '#shared/compute/set-out-unknowns.ts';
 import { askUp, contradiction, departureFromUp, UPRIGHT_LIMIT } from '#shared/compute/set-out-up.ts';
 import { fitSimilarity, similarityForward } from '#shared/compute/similarity.ts';
 import type { EntityOf } from '#shared/contract/document.ts';
@@ -17,10 +18,6 @@ import { fixedText } from '#shared/text/number-text.ts';
 /** How the picture of a drawing at one scale has lost its shape: the paper stretched, or it was photographed aslant. */
 export type LostShape = 'stretchedPaper' | 'perspective';
 
-const UNKNOWNS: Record<LostShape, number> = {
-  stretchedPaper: AFFINE_UNKNOWNS,
-  perspective: PROJECTIVE_UNKNOWNS,
-};
 /** Paper stretches by a few per cent at most; what differs by more is two scales or a mistyped value. */
 const MOST_STRETCH = 0.05;
 const MOST_SHEAR_DEG = 3;
@@ -40,11 +37,6 @@ export function fitOfShape(places: readonly KnownPlace[], shape: LostShape): Fit
   return shape === 'stretchedPaper' ? fitAffine(places) : fitProjective(places);
 }
 
-/** Figures that a fit of this kind uses up. */
-export function unknownsOfShape(shape: LostShape): number {
-  return UNKNOWNS[shape];
-}
-
 /**
  * Sets a section out whose picture has lost its shape: by an affine map from three known points or more, by a projective
  * one from four or more. Clicks are base-raster pixels, typed values the document's length unit.
@@ -55,13 +47,13 @@ export function fitByShape(
   setOut: EntityOf<'setOut'>,
 ): SetOutFit {
   const figures = knownFigures(places);
-  if (figures < UNKNOWNS[shape]) return tooFew(shape);
+  if (figures < unknownsOf(shape)) return tooFew(shape);
   const fit = fitOfShape(places, shape);
   if (fit === null) return undetermined(shape);
   if (departureFromUp(fit.rotation, setOut) > UPRIGHT_LIMIT)
     return setOut.upQuarterTurns === null ? askUp() : contradiction();
   if (setOut.offsetsGrow !== null && (setOut.offsetsGrow === 'left') !== fit.mirrored) return contradiction();
-  return { state: 'fitted', fit, grounds: { redundant: figures - UNKNOWNS[shape], turnFromSheet: false } };
+  return { state: 'fitted', fit, grounds: { redundant: figures - unknownsOf(shape), turnFromSheet: false } };
 }
 
 /**

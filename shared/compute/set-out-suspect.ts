@@ -2,7 +2,8 @@ import { normalTail, studentTail } from '#shared/compute/doubt/tails.ts';
 import { type KnownPlace, knownFigures } from '#shared/compute/known-places.ts';
 import { type FittedSection, fittedBy, fittedByScales, squaresOfMiss } from '#shared/compute/set-out-fit.ts';
 import { placeOf } from '#shared/compute/set-out-points.ts';
-import { fitOfShape, isLostShape, unknownsOfShape } from '#shared/compute/set-out-shape.ts';
+import { fitOfShape, isLostShape } from '#shared/compute/set-out-shape.ts';
+import { unknownsOf } from '#shared/compute/set-out-unknowns.ts';
 import { fitSimilarity } from '#shared/compute/similarity.ts';
 import { singleInputs } from '#shared/compute/single-inputs.ts';
 import { fitTwoScales } from '#shared/compute/two-scales.ts';
@@ -49,7 +50,7 @@ export function suspectAmong(document: FlowNetDocument, model: FittedModel): Sus
     ({ value }) => value.offset !== null || value.elevation !== null,
   );
   const places = points.map(placeOf);
-  const freedom = knownFigures(places) - unknownsOf(model);
+  const freedom = knownFigures(places) - unknownsOf(model.scales, model.turnFromSheet);
   const most = Math.max(0, ...places.map((place) => knownFigures([place])));
   if (freedom - most < 1) return { state: 'tooFew', more: 1 + most - freedom };
   const whole = refitted(places, model);
@@ -64,11 +65,6 @@ export function suspectAmong(document: FlowNetDocument, model: FittedModel): Sus
   return worst === undefined
     ? { state: 'none' }
     : { state: 'suspect', id: worst.id, missPx: worst.missPx, w: worst.w };
-}
-
-function unknownsOf({ scales, turnFromSheet }: FittedModel): number {
-  if (isLostShape(scales)) return unknownsOfShape(scales);
-  return (scales === 'equal' ? 4 : 5) - (turnFromSheet ? 1 : 0);
 }
 
 /** The same model through other places. */

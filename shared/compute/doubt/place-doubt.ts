@@ -2,7 +2,7 @@ import { coverageFactor } from '#shared/compute/doubt/coverage.ts';
 import { type SheetPx, sheetPx } from '#shared/compute/frames.ts';
 import type { SectionMap } from '#shared/compute/section-map.ts';
 import { fittedMap, type SetOut } from '#shared/compute/set-out.ts';
-import { lostShapeOf, unknownsOfShape } from '#shared/compute/set-out-shape.ts';
+import { unknownsOf } from '#shared/compute/set-out-unknowns.ts';
 import { singleInputs } from '#shared/compute/single-inputs.ts';
 import {
   type DocumentEntity,
@@ -87,16 +87,8 @@ export function knownPointHalfWidth(document: FlowNetDocument, setOut: SetOut, m
 function neededFigures(document: FlowNetDocument, { grounds }: SetOut): number {
   const setOut = singleOf(document, 'setOut')?.value;
   if (setOut?.method === 'distance') return 2;
-  const shape = setOut === undefined ? null : lostShapeOf(setOut);
-  if (shape !== null) return unknownsOfShape(shape);
-  const unknowns = setOut?.scales === 'equal' ? SIMILARITY_PARAMETERS : TWO_SCALE_PARAMETERS;
-  return unknowns - (grounds?.turnFromSheet ? 1 : 0);
+  return unknownsOf(setOut?.scales ?? 'equal', grounds?.turnFromSheet);
 }
-
-/** Scale, rotation and two shifts. */
-const SIMILARITY_PARAMETERS = 4;
-/** The same with a scale for each direction. */
-const TWO_SCALE_PARAMETERS = 5;
 
 /**
  * Half-widths (95 %) that the known points leave to the offset and to the elevation of a place on the sheet, section

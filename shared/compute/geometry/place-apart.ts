@@ -1,9 +1,8 @@
 import type { Rect, TakenSpace } from '#shared/compute/geometry/taken-space.ts';
 
 /**
- * Something with words that has to stand apart from the others: its place and the size of its box in pixels or points
- * of what is drawn on, and the distances from its place to the middle of the box that may be tried,
- * the best first.
+ * Something with words that has to stand apart from the others: its place and the size of its box in pixels or points of
+ * what is drawn on, and the distances from its place to the middle of the box that may be tried, the best first.
  */
 export type Placeable = {
   readonly id: string;
@@ -18,7 +17,7 @@ export type Placeable = {
   readonly mayGo?: boolean;
 };
 
-/** Where something went: its place, and from there to the middle of its box. As its place. */
+/** Where something went: its place, and from there to the middle of its box, in the same unit. */
 export type Placed = {
   readonly at: readonly [number, number];
   readonly offset: readonly [number, number];

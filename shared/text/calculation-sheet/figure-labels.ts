@@ -21,8 +21,12 @@ export interface FigureLabel {
   readonly top: number;
   readonly width: number;
   readonly height: number;
+  /** On which the letters stand, so that capitals and figures are in the middle of the box. */
+  readonly baseLine: number;
 }
 
+/** Height of a capital or a figure in the product's font, as a part of the letters' size. */
+const CAPITAL = 0.7;
 /** Room about the letters, and from a mark to its label, as parts of the letters' size. */
 const PADDING = 0.25;
 const LINE_HEIGHT = 1.3;
@@ -111,7 +115,7 @@ export function placeFigureLabels(figure: SectionFigure, setting: LabelSetting):
     ];
   });
   return [named('point', figure.points), named('knownPoint', known), heads].flatMap((wanted) =>
-    placedLabels(wanted, taken),
+    placedLabels(wanted, taken, (CAPITAL / 2) * letters),
   );
 }
 
@@ -121,14 +125,15 @@ type Size = Pick<Placeable, 'widthPx' | 'heightPx'>;
 const place = ([x, y]: readonly [number, number]) => ({ x, y });
 const isWithin = (value: number, most: number) => value >= 0 && value <= most;
 
-function placedLabels(wanted: readonly Wanted[], taken: TakenSpace): FigureLabel[] {
+function placedLabels(wanted: readonly Wanted[], taken: TakenSpace, belowMiddle: number): FigureLabel[] {
   const places = placeApart(wanted, taken);
   return wanted.flatMap((label) => {
     const placed: Placed | null = places.get(label.id) ?? null;
     if (placed === null) return [];
     const { text, of, widthPx: width, heightPx: height } = label;
     const [x, y] = [placed.at[0] + placed.offset[0], placed.at[1] + placed.offset[1]];
-    return [{ text, of, left: x - width / 2, top: y - height / 2, width, height }];
+    const [left, top] = [x - width / 2, y - height / 2];
+    return [{ text, of, left, top, width, height, baseLine: y + belowMiddle }];
   });
 }
 

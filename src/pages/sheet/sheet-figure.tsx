@@ -100,7 +100,7 @@ function Labels({ figure, unit }: { figure: SectionFigure; unit: number }) {
     <text
       key={`${label.left} ${label.top}`}
       x={left + (label.left + label.width / 2) * unit}
-      y={top + (label.top + label.height / 2 + 0.35 * LETTERS) * unit}
+      y={top + label.baseLine * unit}
       textAnchor="middle"
       fontSize={LETTERS * unit}
       fill={labelColour(label.of)}
