@@ -1,5 +1,10 @@
-import { describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { formatAgo, formatDay } from '#client/lib/dates.ts';
+import { chooseLocale } from '#client/lib/locale.ts';
+
+// Files of tests share what is loaded, and a library may have given them a navigator of another locale.
+beforeAll(() => chooseLocale('en-GB'));
+afterAll(() => chooseLocale(null));
 
 const now = new Date(2026, 11, 1, 14, 0, 0);
 const before = (ms: number) => new Date(now.getTime() - ms).toISOString();
